@@ -1,0 +1,129 @@
+import { AppError } from '@/lib/app-error';
+import { ROLES, type Role } from './role';
+
+export interface Person {
+  readonly id: string;
+  readonly roles: readonly Role[];
+}
+
+/** What an action is about. A condition that needs a field which is not given refuses. */
+export interface Subject {
+  /** Who wrote the document, or saved the member last. */
+  readonly authorId?: string;
+  /** Who reviewed the document; null while nobody has. */
+  readonly reviewerId?: string | null;
+  /** Who can open the job: all the practice, or the people named. */
+  readonly access?: 'practice' | readonly string[];
+}
+
+type Condition = (person: Person, subject: Subject) => boolean;
+
+const isAuthor: Condition = (person, { authorId }) => authorId === person.id;
+
+const isNotAuthor: Condition = (person, { authorId }) => authorId !== undefined && authorId !== person.id;
+
+const wasReviewedByAnother: Condition = (_, { authorId, reviewerId }) =>
+  authorId !== undefined && typeof reviewerId === 'string' && reviewerId !== authorId;
+
+const hasAccess: Condition = (person, { access }) =>
+  access === 'practice' || (access?.includes(person.id) ?? false);
+
+/** Any one of the grants suffices; a grant needs one of its roles and all of its conditions. */
+interface Rule {
+  readonly grants: readonly { readonly roles: readonly Role[]; readonly when: readonly Condition[] }[];
+  /** Said to whoever is refused: the rule of the practice, not the permission system. */
+  readonly said: string;
+}
+
+const grant = (roles: readonly Role[], ...when: Condition[]) => ({ roles, when });
+const rule = (said: string, ...grants: Rule['grants'][number][]): Rule => ({ said, grants });
+
+const JOB_ACCESS = 'Only people with access to the job see it.';
+
+/** Who may do what: the only place that knows. */
+const RULES = {
+  'beam.solve': rule('Beams are solved for people with a role in a practice.', grant(ROLES)),
+  'library.read': rule('The library is open to people with a role in the practice.', grant(ROLES)),
+  'library.propose': rule(
+    'Drafts are begun by an engineer or a librarian.',
+    grant(['engineer', 'librarian']),
+  ),
+  'library.edit': rule(
+    'A draft is changed by its author or a librarian.',
+    grant(['librarian']),
+    grant(['engineer'], isAuthor),
+  ),
+  'library.submit': rule(
+    'A draft is sent to review by its author or a librarian.',
+    grant(['librarian']),
+    grant(['engineer'], isAuthor),
+  ),
+  'library.review': rule(
+    'A document is reviewed by a checker or a librarian who did not write it.',
+    grant(['checker', 'librarian'], isNotAuthor),
+  ),
+  'library.issue': rule(
+    'A document is issued by a librarian, after review by somebody who did not write it.',
+    grant(['librarian'], wasReviewedByAnother),
+  ),
+  'library.withdraw': rule(
+    'A document is withdrawn by a librarian or a principal.',
+    grant(['librarian', 'principal']),
+  ),
+
+  'job.create': rule('Jobs are begun by an engineer.', grant(['engineer'])),
+  'job.read': rule(JOB_ACCESS, grant(ROLES, hasAccess)),
+  'job.edit': rule('A job is changed by an engineer with access to it.', grant(['engineer'], hasAccess)),
+  'job.set-access': rule(
+    'Access to a job is set by the engineer who began it or a principal.',
+    grant(['engineer'], isAuthor, hasAccess),
+    grant(['principal'], hasAccess),
+  ),
+  'job.set-check-category': rule(
+    'The check category is set by a principal with access to the job.',
+    grant(['principal'], hasAccess),
+  ),
+  'job.issue': rule('A job is issued by a principal with access to it.', grant(['principal'], hasAccess)),
+
+  'member.read': rule(JOB_ACCESS, grant(ROLES, hasAccess)),
+  'member.edit': rule(
+    'A member is changed by an engineer with access to the job.',
+    grant(['engineer'], hasAccess),
+  ),
+  'member.submit': rule(
+    'A member is handed to the checker by an engineer with access to the job.',
+    grant(['engineer'], hasAccess),
+  ),
+  'member.comment': rule(
+    'Members are commented on by the people who design, check and sign the job.',
+    grant(['engineer', 'checker', 'librarian', 'principal'], hasAccess),
+  ),
+  'member.check': rule(
+    'A member is checked by a checker with access to the job who did not design it.',
+    grant(['checker'], hasAccess, isNotAuthor),
+  ),
+
+  'people.manage': rule('People and their roles are managed by an administrator.', grant(['administrator'])),
+  'practice.manage': rule(
+    'The practice’s settings are changed by an administrator.',
+    grant(['administrator']),
+  ),
+  'audit.read': rule(
+    'The record of events is read by a principal or an administrator.',
+    grant(['principal', 'administrator']),
+  ),
+} as const satisfies Record<string, Rule>;
+
+export type Action = keyof typeof RULES;
+
+export function may(person: Person, action: Action, subject: Subject = {}): boolean {
+  return RULES[action].grants.some(
+    ({ roles, when }) =>
+      person.roles.some((role) => roles.includes(role)) && when.every((holds) => holds(person, subject)),
+  );
+}
+
+/** Refuses (403) with the rule in words. */
+export function requirePermission(person: Person, action: Action, subject: Subject = {}): void {
+  if (!may(person, action, subject)) throw new AppError('forbidden', RULES[action].said);
+}

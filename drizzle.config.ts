@@ -1,0 +1,9 @@
+import { defineConfig } from 'drizzle-kit';
+
+export default defineConfig({
+  dialect: 'postgresql',
+  schema: './src/db/schema/*.ts',
+  out: './drizzle',
+  casing: 'snake_case',
+  entities: { roles: false },
+});

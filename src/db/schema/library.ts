@@ -1,0 +1,106 @@
+import { sql } from 'drizzle-orm';
+import {
+  check,
+  foreignKey,
+  index,
+  integer,
+  jsonb,
+  pgEnum,
+  pgTable,
+  primaryKey,
+  text,
+  uniqueIndex,
+  uuid,
+} from 'drizzle-orm/pg-core';
+import {
+  CHANGE_CLASSES,
+  CONSEQUENCES,
+  DOCUMENT_KINDS,
+  REVISION_STATES,
+  SEVERITIES,
+} from '@/features/review/review';
+import { ofMember, practice } from './account';
+import { id, moment, now, oneOf, practiceId, tenantPolicy } from './tenant';
+
+export const documentKind = pgEnum('document_kind', DOCUMENT_KINDS);
+export const revisionState = pgEnum('revision_state', REVISION_STATES);
+
+/** What members depend on and people approve: its name in the library. What it says stands in its revisions. */
+export const document = pgTable(
+  'document',
+  {
+    practiceId: practiceId().references(() => practice.id),
+    id: id(),
+    kind: documentKind().notNull(),
+    slug: text().notNull(),
+    reference: text().notNull(),
+    name: text().notNull(),
+    createdAt: now(),
+  },
+  (table) => [
+    primaryKey({ columns: [table.practiceId, table.id] }),
+    uniqueIndex('document_slug').on(table.practiceId, table.kind, table.slug),
+    uniqueIndex('document_reference').on(table.practiceId, table.reference),
+    check('document_slug_kebab', sql`${table.slug} ~ '^[a-z0-9]+(-[a-z0-9]+)*$'`),
+    tenantPolicy('document'),
+  ],
+);
+
+/** One state of a document; a section table's are called editions. Frozen by a trigger once it has left the draft. */
+export const revision = pgTable(
+  'revision',
+  {
+    practiceId: practiceId(),
+    id: id(),
+    documentId: uuid().notNull(),
+    number: integer().notNull(),
+    state: revisionState().notNull().default('draft'),
+    body: jsonb().$type<unknown>().notNull(),
+    schemaVersion: integer().notNull(),
+    engineVersion: text().notNull(),
+    sha256: text().notNull(),
+    authorId: uuid().notNull(),
+    reviewerId: uuid(),
+    changeNote: text().notNull().default(''),
+    changeClass: text({ enum: CHANGE_CLASSES }).notNull(),
+    consequence: text({ enum: CONSEQUENCES }).notNull(),
+    createdAt: now(),
+    submittedAt: moment(),
+    issuedAt: moment(),
+    supersededAt: moment(),
+    withdrawnAt: moment(),
+    withdrawnById: uuid(),
+    withdrawalReason: text(),
+    withdrawalSeverity: text({ enum: SEVERITIES }),
+  },
+  (table) => [
+    primaryKey({ columns: [table.practiceId, table.id] }),
+    foreignKey({
+      name: 'revision_document_fk',
+      columns: [table.practiceId, table.documentId],
+      foreignColumns: [document.practiceId, document.id],
+    }),
+    ofMember('revision_author_fk', table.practiceId, table.authorId),
+    ofMember('revision_reviewer_fk', table.practiceId, table.reviewerId),
+    ofMember('revision_withdrawn_by_fk', table.practiceId, table.withdrawnById),
+    uniqueIndex('revision_number').on(table.practiceId, table.documentId, table.number),
+    uniqueIndex('revision_one_issued').on(table.practiceId, table.documentId).where(sql`state = 'issued'`),
+    index('revision_state').on(table.practiceId, table.state),
+    check('revision_sha256', sql`${table.sha256} ~ '^[0-9a-f]{64}$'`),
+    check('revision_change_class', oneOf(table.changeClass, CHANGE_CLASSES)),
+    check('revision_consequence', oneOf(table.consequence, CONSEQUENCES)),
+    check(
+      'revision_not_issued_by_author',
+      sql`${table.state} in ('draft', 'in_review') or (${table.reviewerId} is not null and ${table.reviewerId} <> ${table.authorId})`,
+    ),
+    check(
+      'revision_issued_with_note',
+      sql`${table.state} in ('draft', 'in_review') or length(trim(${table.changeNote})) > 0`,
+    ),
+    check(
+      'revision_withdrawn_with_reason',
+      sql`(${table.state} = 'withdrawn') = (${table.withdrawalReason} is not null and ${table.withdrawalSeverity} is not null and ${table.withdrawnById} is not null)`,
+    ),
+    tenantPolicy('revision'),
+  ],
+);

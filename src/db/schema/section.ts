@@ -1,0 +1,53 @@
+import {
+  doublePrecision,
+  foreignKey,
+  index,
+  jsonb,
+  pgTable,
+  primaryKey,
+  text,
+  uniqueIndex,
+  uuid,
+} from 'drizzle-orm/pg-core';
+import { revision } from './library';
+import { id, practiceId, tenantPolicy } from './tenant';
+
+/** A row of one edition of a section table. Written while the edition is a draft, frozen with it. */
+export const section = pgTable(
+  'section',
+  {
+    practiceId: practiceId(),
+    id: id(),
+    revisionId: uuid().notNull(),
+    tableSlug: text().notNull(),
+    designation: text().notNull(),
+    /** The designation as it is searched for: one spelling for however it is typed. */
+    designationKey: text().notNull(),
+    printed: text().notNull(),
+    shape: text().notNull(),
+    depthMm: doublePrecision().notNull(),
+    widthMm: doublePrecision().notNull(),
+    massKgM: doublePrecision().notNull(),
+    areaCm2: doublePrecision('area_cm2').notNull(),
+    iMajorCm4: doublePrecision('i_major_cm4').notNull(),
+    iMinorCm4: doublePrecision('i_minor_cm4').notNull(),
+    wElCm3: doublePrecision('w_el_cm3').notNull(),
+    wPlCm3: doublePrecision('w_pl_cm3'),
+    jCm4: doublePrecision('j_cm4'),
+    iwCm6: doublePrecision('iw_cm6'),
+    computed: text().array().notNull().default([]),
+    dimensions: jsonb().$type<Record<string, number>>().notNull(),
+  },
+  (table) => [
+    primaryKey({ columns: [table.practiceId, table.id] }),
+    foreignKey({
+      name: 'section_revision_fk',
+      columns: [table.practiceId, table.revisionId],
+      foreignColumns: [revision.practiceId, revision.id],
+    }),
+    uniqueIndex('section_designation').on(table.practiceId, table.revisionId, table.designationKey),
+    index('section_depth').on(table.practiceId, table.revisionId, table.depthMm),
+    index('section_mass').on(table.practiceId, table.revisionId, table.massKgM),
+    tenantPolicy('section'),
+  ],
+);

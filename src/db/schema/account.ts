@@ -37,7 +37,7 @@ export const practice = pgTable(
     offices: text().array().notNull().default([]),
     createdAt: now(),
   },
-  () => [pgPolicy('practice_itself', { for: 'select', to: web, using: sql`id = ${currentPractice}` })],
+  () => [pgPolicy('practice_itself', { for: 'all', to: web, using: sql`id = ${currentPractice}` })],
 );
 
 /** People stand outside the practices: one person may work for two. A practice sees those who are its members. */
@@ -59,6 +59,8 @@ export const person = pgTable(
       to: web,
       using: sql`exists (select from membership where membership.practice_id = ${currentPractice} and membership.person_id = person.id)`,
     }),
+    // Only the database's owner is granted INSERT; a person is let in before she is anybody's member.
+    pgPolicy('person_new', { for: 'insert', to: web, withCheck: sql`true` }),
     pgPolicy('person_herself', { for: 'update', to: web, using: sql`id = ${currentPerson}` }),
   ],
 );

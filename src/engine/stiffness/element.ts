@@ -1,0 +1,159 @@
+import type { Beam } from '../model/index';
+import { Wide } from './wide';
+
+/** A piece of the beam between two neighbouring points: constant EI and GA, a load varying linearly, one curvature. */
+export type Element = {
+  from: number;
+  to: number;
+  /** Length, EI, and 1/GA (0 where the piece does not shear). */
+  length: Wide;
+  ei: Wide;
+  shearFlexibility: Wide;
+  /** Φ = 12 EI / (GA h²) */
+  phi: Wide;
+  /** Downward load at the left and right end, N/m. */
+  load: readonly [Wide, Wide];
+  /** Free curvature, 1/m, sagging. */
+  curvature: Wide;
+};
+
+/** What acts at one cross-section: V, M, the section's rotation ψ and the deflection v. */
+export type SectionState = { shear: Wide; moment: Wide; rotation: Wide; deflection: Wide };
+
+/** Every position where something starts, stops or acts, ascending. */
+export function pointsOf(beam: Beam): number[] {
+  const points = new Set([0, beam.length, ...beam.hinges]);
+  for (const support of beam.supports) points.add(support.at);
+  for (const segment of beam.segments) points.add(segment.from).add(segment.to);
+  for (const load of beam.loads) {
+    if (load.kind === 'point' || load.kind === 'couple') points.add(load.at);
+    else points.add(load.from).add(load.to);
+  }
+  return [...points].sort((a, b) => a - b);
+}
+
+export function elementsOf(beam: Beam, points: readonly number[]): Element[] {
+  return points.slice(1).map((to, k) => elementBetween(beam, points[k]!, to));
+}
+
+function elementBetween(beam: Beam, from: number, to: number): Element {
+  const segment = beam.segments.find((s) => s.from <= from && to <= s.to);
+  if (!segment) throw new RangeError(`no segment of the beam holds ${from} to ${to}`);
+  const length = Wide.difference(to, from);
+  const ei = Wide.of(segment.ei);
+  const shearFlexibility = segment.ga === null ? Wide.ZERO : Wide.ONE.over(segment.ga);
+  let [left, right, curvature] = [Wide.ZERO, Wide.ZERO, Wide.ZERO];
+  for (const load of beam.loads) {
+    if (load.kind === 'point' || load.kind === 'couple' || load.from > from || load.to < to) continue;
+    if (load.kind === 'curvature') {
+      curvature = curvature.plus(Wide.of(load.kappa));
+    } else {
+      left = left.plus(intensity(load, from));
+      right = right.plus(intensity(load, to));
+    }
+  }
+  return {
+    from,
+    to,
+    length,
+    ei,
+    shearFlexibility,
+    phi: ei.times(12).times(shearFlexibility).over(length.times(length)),
+    load: [left, right],
+    curvature,
+  };
+}
+
+function intensity(load: { from: number; to: number; w0: number; w1: number }, x: number): Wide {
+  const part = Wide.difference(x, load.from).over(Wide.difference(load.to, load.from));
+  return Wide.of(load.w0).plus(Wide.difference(load.w1, load.w0).times(part));
+}
+
+/**
+ * Stiffness of a piece that bends and shears, forces on its ends from (v₁, ψ₁, v₂, ψ₂):
+ *
+ *   k = EI / ((1 + Φ) h³) · [ 12, 6h, −12, 6h;  ·, (4 + Φ)h², −6h, (2 − Φ)h²;  ·, ·, 12, −6h;  ·, ·, ·, (4 + Φ)h² ]
+ *
+ * Upward and anticlockwise positive. Exact for a prismatic piece (J. S. Przemieniecki, Theory of Matrix Structural
+ * Analysis, 1968, section 5.6, from memory).
+ */
+export function elementStiffness({ length: h, ei, phi }: Element): Wide[][] {
+  const square = h.times(h);
+  const unit = ei.over(Wide.ONE.plus(phi).times(square).times(h));
+  const twelve = unit.times(12);
+  const six = unit.times(6).times(h);
+  const near = unit.times(square).times(Wide.of(4).plus(phi));
+  const far = unit.times(square).times(Wide.of(2).minus(phi));
+  const [minusTwelve, minusSix] = [twelve.negated(), six.negated()];
+  return [
+    [twelve, six, minusTwelve, six],
+    [six, near, minusSix, far],
+    [minusTwelve, minusSix, twelve, minusSix],
+    [six, far, minusSix, near],
+  ];
+}
+
+/**
+ * Forces on the ends of the piece held fixed under its load and curvature, in the order of elementStiffness.
+ * The load is its mean q and half its change d; the mean is symmetric, so shear does not alter its end moments:
+ *
+ *   mean:       force qh/2, moment ±qh²/12
+ *   change:     force ∓dh (6 + 5Φ) / (30 (1 + Φ)), moment −dh² / (60 (1 + Φ))      (own derivation; Φ = 0: ∓dh/5, −dh²/60)
+ *   curvature:  moment ±EIκ
+ */
+export function fixedEndForces({ length: h, ei, phi, load, curvature }: Element): Wide[] {
+  const mean = load[0].plus(load[1]).over(2);
+  const change = load[1].minus(load[0]).over(2);
+  const stiffened = Wide.ONE.plus(phi);
+  const force = mean.times(h).over(2);
+  const moment = mean.times(h).times(h).over(12).plus(ei.times(curvature));
+  const forceOfChange = change
+    .times(h)
+    .times(Wide.of(6).plus(phi.times(5)))
+    .over(stiffened.times(30));
+  const momentOfChange = change.times(h).times(h).over(stiffened.times(60));
+  return [
+    force.minus(forceOfChange),
+    moment.minus(momentOfChange),
+    force.plus(forceOfChange),
+    moment.negated().minus(momentOfChange),
+  ];
+}
+
+/** The state at s from the left end, from the state there: equilibrium, then ψ' = M/EI + κ and v' = ψ − V/GA. */
+export function stateAt(element: Element, start: SectionState, s: Wide): SectionState {
+  const { ei, load, length, curvature, shearFlexibility } = element;
+  const rate = load[1].minus(load[0]).over(length);
+  // V, M − M₀ and the bending parts of ψ and v: the load integrated once, twice, three and four times
+  const shear = polynomial(s, [start.shear, load[0].negated(), rate.over(-2)]);
+  const gain = polynomial(s, [Wide.ZERO, start.shear, load[0].over(-2), rate.over(-6)]);
+  const bend = polynomial(s, [
+    Wide.ZERO,
+    start.moment,
+    start.shear.over(2),
+    load[0].over(-6),
+    rate.over(-24),
+  ]);
+  const sag = polynomial(s, [
+    Wide.ZERO,
+    Wide.ZERO,
+    start.moment.over(2),
+    start.shear.over(6),
+    load[0].over(-24),
+    rate.over(-120),
+  ]);
+  return {
+    shear,
+    moment: start.moment.plus(gain),
+    rotation: start.rotation.plus(bend.over(ei)).plus(curvature.times(s)),
+    deflection: start.deflection
+      .plus(start.rotation.times(s))
+      .plus(sag.over(ei))
+      .plus(curvature.times(s).times(s).over(2))
+      .minus(gain.times(shearFlexibility)),
+  };
+}
+
+function polynomial(s: Wide, coefficients: readonly Wide[]): Wide {
+  return coefficients.reduceRight((total, c) => total.times(s).plus(c), Wide.ZERO);
+}

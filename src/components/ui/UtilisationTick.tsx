@@ -1,4 +1,5 @@
-import { LIMIT_PLACE, tickPlace, utilisationFigure, utilisationState } from './utilisation';
+import { formatUtilisation } from '@/engine/quantity';
+import { LIMIT_PLACE, tickPlace, utilisationState } from './utilisation';
 
 interface UtilisationTickProps {
   ratio: number;
@@ -18,7 +19,7 @@ export function UtilisationTick({ ratio, width = 74 }: UtilisationTickProps) {
   return (
     <span className="inline-flex items-center gap-8 whitespace-nowrap">
       <span className={`min-w-30 text-right ${fails ? 'font-semibold text-error' : ''}`}>
-        {utilisationFigure(ratio)}
+        {formatUtilisation(ratio)}
         {fails && <span className="sr-only"> fails</span>}
       </span>
       <svg width={width} height={HEIGHT} viewBox={`0 0 ${width} ${HEIGHT}`} aria-hidden="true" fill="none">

@@ -36,32 +36,32 @@ const ACTIONS = Object.entries(TABLE).map(([action, row]) => [action as Action, 
 
 describe('the permission table', () => {
   test.each(ACTIONS)('%s: each role is allowed or refused as listed', (action, subject, allowed) => {
-    const granted = ROLES.filter((role) => may({ id: ME, roles: [role] }, action, subject));
+    const granted = ROLES.filter((role) => may({ personId: ME, roles: [role] }, action, subject));
     expect(granted.join(' ')).toBe(allowed);
   });
 
   test.each(ACTIONS)('%s: nobody without a role', (action, subject) => {
-    expect(may({ id: ME, roles: [] }, action, subject)).toBe(false);
+    expect(may({ personId: ME, roles: [] }, action, subject)).toBe(false);
   });
 
   test.each(ACTIONS)('%s: several roles allow what any one of them allows', (action, subject, allowed) => {
-    expect(may({ id: ME, roles: ROLES }, action, subject)).toBe(allowed !== '');
+    expect(may({ personId: ME, roles: ROLES }, action, subject)).toBe(allowed !== '');
   });
 
   test.each(ACTIONS.filter(([action]) => /^(job|member)\.(?!create)/.test(action)))(
     '%s: of a job with named people, refused to the rest but principals and administrators',
     (action, subject, allowed) => {
       const closed = { ...subject, access: [OTHER] };
-      const granted = ROLES.filter((role) => may({ id: ME, roles: [role] }, action, closed));
+      const granted = ROLES.filter((role) => may({ personId: ME, roles: [role] }, action, closed));
       expect(granted.join(' ')).toBe((allowed.match(/principal|administrator/g) ?? []).join(' '));
-      expect(may({ id: ME, roles: ROLES }, action, { authorId: OTHER })).toBe(false);
+      expect(may({ personId: ME, roles: ROLES }, action, { authorId: OTHER })).toBe(false);
     },
   );
 });
 
 describe('conditions', () => {
   const mayAs = (role: Role, action: Action, subject?: Subject) =>
-    may({ id: ME, roles: [role] }, action, subject);
+    may({ personId: ME, roles: [role] }, action, subject);
 
   test('a named person has access to a job, in the part their role gives', () => {
     expect(mayAs('reader', 'job.read', { access: [OTHER, ME] })).toBe(true);
@@ -74,7 +74,7 @@ describe('conditions', () => {
   });
 
   test('the author neither reviews nor checks, whatever their roles', () => {
-    const all = { id: ME, roles: ROLES };
+    const all = { personId: ME, roles: ROLES };
     expect(may(all, 'library.review', { authorId: ME })).toBe(false);
     expect(may(all, 'member.check', { access: 'practice', authorId: ME })).toBe(false);
   });
@@ -93,7 +93,7 @@ describe('conditions', () => {
 });
 
 test('a refusal states the rule', () => {
-  expect(() => requirePermission({ id: ME, roles: ['reader'] }, 'people.manage')).toThrow(
+  expect(() => requirePermission({ personId: ME, roles: ['reader'] }, 'people.manage')).toThrow(
     'People and their roles are managed by an administrator.',
   );
 });

@@ -2,7 +2,7 @@ import { AppError } from '@/lib/app-error';
 import { ROLES, type Role } from './roles';
 
 export interface Person {
-  readonly id: string;
+  readonly personId: string;
   readonly roles: readonly Role[];
 }
 
@@ -18,18 +18,19 @@ export interface Subject {
 
 type Condition = (person: Person, subject: Subject) => boolean;
 
-const isAuthor: Condition = (person, { authorId }) => authorId === person.id;
+const isAuthor: Condition = (person, { authorId }) => authorId === person.personId;
 
-const isNotAuthor: Condition = (person, { authorId }) => authorId !== undefined && authorId !== person.id;
+const isNotAuthor: Condition = (person, { authorId }) =>
+  authorId !== undefined && authorId !== person.personId;
 
 const wasReviewedByAnother: Condition = (_, { authorId, reviewerId }) =>
   authorId !== undefined && typeof reviewerId === 'string' && reviewerId !== authorId;
 
 /** The database's policy says the same: principals answer for every job, administrators restore any. */
-const hasAccess: Condition = ({ id, roles }, { access }) =>
+const hasAccess: Condition = ({ personId, roles }, { access }) =>
   access === 'practice' ||
   (access !== undefined &&
-    (access.includes(id) || roles.includes('principal') || roles.includes('administrator')));
+    (access.includes(personId) || roles.includes('principal') || roles.includes('administrator')));
 
 /** Any one of the grants suffices; a grant needs one of its roles and all of its conditions. */
 interface Rule {

@@ -1,0 +1,35 @@
+/** Every address of the product. No URL is spelled twice. */
+export const paths = {
+  home: '/',
+  signIn: '/sign-in',
+  signOut: '/sign-out',
+  account: '/account',
+  healthz: '/healthz',
+  readyz: '/readyz',
+  api: {
+    me: '/api/v1/me',
+    password: '/api/v1/me/password',
+    session: '/api/v1/session',
+    sessions: '/api/v1/sessions',
+    sessionById: (id: string) => `/api/v1/sessions/${encodeURIComponent(id)}`,
+    tokens: '/api/v1/tokens',
+    tokenById: (id: string) => `/api/v1/tokens/${encodeURIComponent(id)}`,
+    openapi: '/api/v1/openapi.json',
+    solve: '/api/v1/beams/solve',
+  },
+} as const;
+
+/** The sign-in page, and where to go from there. */
+export const signInPath = (next: string): string =>
+  next === paths.home ? paths.signIn : `${paths.signIn}?next=${encodeURIComponent(next)}`;
+
+/** A path of our own to go on to, or home: never another site's, never the sign-in page again. */
+export function localPath(next: string | null | undefined): string {
+  const base = 'http://local.invalid';
+  // A browser reads a backslash as a slash and drops control characters: both could lead to another site.
+  if (!next?.startsWith('/') || /[\\\p{Cc}]/u.test(next) || !URL.canParse(next, base)) return paths.home;
+  const url = new URL(next, base);
+  if (url.origin !== base || url.pathname.startsWith('//') || url.pathname === paths.signIn)
+    return paths.home;
+  return url.pathname + url.search + url.hash;
+}

@@ -145,6 +145,17 @@ END $$;--> statement-breakpoint
 CREATE TRIGGER section_guard BEFORE INSERT OR UPDATE OR DELETE ON section
 	FOR EACH ROW EXECUTE FUNCTION section_guard();--> statement-breakpoint
 
+-- The end of the practice's chain, held until the transaction ends. The lock comes first: the row is read after it.
+CREATE FUNCTION audit_head(OUT sequence bigint, OUT hash text) LANGUAGE plpgsql AS $$
+DECLARE
+	practice uuid := current_setting('app.practice_id')::uuid;
+BEGIN
+	PERFORM pg_advisory_xact_lock(hashtextextended('audit ' || practice, 0));
+	SELECT e.sequence, e.hash INTO sequence, hash FROM audit_event e WHERE e.practice_id = practice ORDER BY e.sequence DESC LIMIT 1;
+	sequence := coalesce(sequence, 0);
+	hash := coalesce(hash, repeat('0', 64));
+END $$;--> statement-breakpoint
+
 CREATE FUNCTION audit_event_append() RETURNS trigger LANGUAGE plpgsql AS $$
 DECLARE
 	head record;

@@ -1,4 +1,4 @@
-import type { Role } from '@/features/account/roles';
+import { type Action, may, type Person } from '@/features/account/permission';
 
 export const DOCUMENT_KINDS = ['template', 'section-table', 'criteria'] as const;
 export type DocumentKind = (typeof DOCUMENT_KINDS)[number];
@@ -12,55 +12,45 @@ export type ChangeClass = (typeof CHANGE_CLASSES)[number];
 export const CONSEQUENCES = ['safety', 'service', 'cosmetic'] as const;
 export type Consequence = (typeof CONSEQUENCES)[number];
 
-/** How bad what a withdrawn revision got wrong is. The same scale as the consequence of a change. */
+/** How bad what a withdrawn revision got wrong is: the scale of a change's consequence. */
 export const SEVERITIES = CONSEQUENCES;
 export type Severity = Consequence;
 
-export type Step = {
+interface Step {
   readonly from: readonly RevisionState[];
   readonly to: RevisionState;
-  /** Holders of any of these roles; null: no person takes it, it follows from another step. */
-  readonly roles: readonly Role[] | null;
-  /** `author`: only the author (or a librarian for her). `other`: anybody but the author. */
-  readonly who: 'author' | 'other' | 'any';
-};
+  /** What a person must be allowed to do; null: no person asks for it, it follows from another step. */
+  readonly action: Action | null;
+  readonly done: string;
+}
 
-/** Every legal move of a revision. Nothing else writes its state; the database refuses what is not here. */
+/** Every legal move of a revision. Nothing else writes its state, and the database refuses what is not here. */
 export const REVISION_STEPS = {
-  submit: { from: ['draft'], to: 'in_review', roles: ['engineer', 'librarian'], who: 'author' },
-  return: { from: ['in_review'], to: 'draft', roles: ['checker', 'librarian'], who: 'any' },
-  issue: { from: ['in_review'], to: 'issued', roles: ['checker', 'librarian'], who: 'other' },
-  supersede: { from: ['issued'], to: 'superseded', roles: null, who: 'any' },
+  submit: { from: ['draft'], to: 'in_review', action: 'library.submit', done: 'sent to review' },
+  return: { from: ['in_review'], to: 'draft', action: 'library.review', done: 'returned to its author' },
+  issue: { from: ['in_review'], to: 'issued', action: 'library.review', done: 'issued' },
+  supersede: { from: ['issued'], to: 'superseded', action: null, done: 'superseded' },
   withdraw: {
     from: ['issued', 'superseded'],
     to: 'withdrawn',
-    roles: ['librarian', 'principal'],
-    who: 'any',
+    action: 'library.withdraw',
+    done: 'withdrawn',
   },
 } as const satisfies Record<string, Step>;
 
 export type StepName = keyof typeof REVISION_STEPS;
-/** The steps a person may ask for. */
+
+/** The steps that a person asks for. */
 export const PERSON_STEPS = ['submit', 'return', 'issue', 'withdraw'] as const satisfies readonly StepName[];
 export type PersonStep = (typeof PERSON_STEPS)[number];
 
-export type Reviewer = { readonly personId: string; readonly roles: readonly Role[] };
-
-export type StepRefusal = 'wrong_state' | 'role_missing' | 'not_author' | 'own_work';
-
-/** Why this person may not take this step of this revision; null when she may. */
-export function refuseStep(
-  name: PersonStep,
+/** The steps that this person could take of this revision now: the buttons to show. */
+export function stepsFor(
+  person: Person,
   revision: { readonly state: RevisionState; readonly authorId: string },
-  person: Reviewer,
-): StepRefusal | null {
-  const step: Step = REVISION_STEPS[name];
-  if (!step.roles?.some((role) => person.roles.includes(role))) return 'role_missing';
-  const isAuthor = revision.authorId === person.personId;
-  if (step.who === 'other' && isAuthor) return 'own_work';
-  if (step.who === 'author' && !isAuthor && !person.roles.includes('librarian')) return 'not_author';
-  return step.from.includes(revision.state) ? null : 'wrong_state';
+): readonly PersonStep[] {
+  return PERSON_STEPS.filter((name) => {
+    const step: Step = REVISION_STEPS[name];
+    return step.from.includes(revision.state) && may(person, REVISION_STEPS[name].action, revision);
+  });
 }
-
-/** Which roles may open a draft. An engineer's is a proposal. */
-export const DRAFT_ROLES = ['engineer', 'librarian'] as const satisfies readonly Role[];

@@ -4,6 +4,11 @@ export const paths = {
   signIn: '/sign-in',
   signOut: '/sign-out',
   account: '/account',
+  templates: '/templates',
+  sections: '/sections',
+  jobs: '/jobs',
+  help: '/help',
+  helpPage: (page: string) => `/help/${encodeURIComponent(page)}`,
   healthz: '/healthz',
   readyz: '/readyz',
   api: {

@@ -125,6 +125,7 @@ function readUnsigned(unsigned: string, text: string, name: DimensionName, field
     if (feet?.ok) return finite(feet.value, text, name);
   }
   const [, number = '', unit = ''] = NUMBER.exec(unsigned) ?? [];
+  if (/^(?!1\/[a-zA-Z°])[\d.,+-]/.test(unit)) return notANumber(text, name);
   const read = readNumber(number);
   if (!read.ok && read.code === 'ambiguous_number') {
     const shown = unit || (field ?? usualUnits(name)[0] ?? '').replace('ft-in', 'ft');
@@ -135,7 +136,7 @@ function readUnsigned(unsigned: string, text: string, name: DimensionName, field
       choices,
     );
   }
-  if (!read.ok || /^(?!1\/)[\d.,+-]/.test(unit)) return notANumber(text, name);
+  if (!read.ok) return notANumber(text, name);
   return unit === '' ? readBare(number, read.value, name, field) : scale(read.value, unit, name);
 }
 

@@ -1,13 +1,13 @@
 import type { Redundant } from '../model/index';
-import type { Piecewise } from '../polynomial/index';
+import type { Extreme, Piecewise } from '../polynomial/index';
 
 /** [just left, just right]; at the two ends both are the value inside the beam. */
 export type Pair = [number, number];
 
 export type Station = { x: number; shear: Pair; moment: Pair; slope: Pair; deflection: number };
 
-/** `at`: ascending, every position where the extreme is attained; a constant stretch gives its two ends. */
-export type Extreme = { value: number; at: number[] };
+export type { Extreme } from '../polynomial/index';
+
 export type Extremes = Record<'shear' | 'moment' | 'slope' | 'deflection', { max: Extreme; min: Extreme }>;
 
 /** Vertical N, positive up; moment N·m, anticlockwise on the beam; 0 where unrestrained. */
@@ -28,7 +28,12 @@ export type ForceMethod = {
 };
 
 /** Relative to the largest value of its kind. */
-export type Proof = { equilibrium: number; compatibility: number; agreement: number; method: 'direct stiffness' };
+export type Proof = {
+  equilibrium: number;
+  compatibility: number;
+  agreement: number;
+  method: 'direct stiffness';
+};
 
 /** The diagrams as exact piecewise polynomials of x: V ≤ 2, M ≤ 3, θ ≤ 4, v ≤ 5 in degree. */
 export type Diagrams = { shear: Piecewise; moment: Piecewise; slope: Piecewise; deflection: Piecewise };

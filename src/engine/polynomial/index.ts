@@ -1,1 +1,17 @@
-export type * from './types';
+export { extremes, magnitude, settle } from './extremes';
+export {
+  add,
+  differentiate,
+  evaluate,
+  evaluatePiece,
+  integralOfProduct,
+  integrate,
+  multiply,
+  pieceAt,
+  pieceCount,
+  piecewise,
+  scale,
+} from './piecewise';
+export { rootsOfPiece } from './roots';
+export { signChanges } from './sign-changes';
+export type { Extreme, Piecewise } from './types';

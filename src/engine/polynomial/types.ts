@@ -7,3 +7,6 @@ export type Piecewise = {
   readonly degree: number;
   readonly coefficients: Float64Array;
 };
+
+/** `at`: ascending, every position where the extreme is attained; a constant piece gives its two ends. */
+export type Extreme = { value: number; at: number[] };

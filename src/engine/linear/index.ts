@@ -1,0 +1,2 @@
+export { Cholesky, type LowerRow, SingularMatrix } from './cholesky';
+export { Wide } from './wide';

@@ -1,5 +1,7 @@
 declare namespace App {
   interface Locals {
+    /** Where the product is reached: its scheme and host, as configured. */
+    origin: string;
     /** Who asks; null when nobody is signed in. */
     user: import('@/features/account/account').User | null;
     /** The person's choice; null follows the device. */

@@ -1,7 +1,7 @@
 import { z } from 'zod';
 import type { UnitSystemName } from '@/engine/quantity';
 import { PASSWORD_LENGTH } from './password';
-import type { Role } from './roles';
+import { ROLES, type Role } from './roles';
 
 /** Whoever makes a request, in the practice in which they make it. It is a tenant for the database as it stands. */
 export interface User {
@@ -27,5 +27,21 @@ export const SignIn = z.strictObject({
 });
 export type SignIn = z.output<typeof SignIn>;
 
-/** Hours a session lasts without use, and at most. */
-export const SESSION_HOURS = { idle: 2, absolute: 12 } as const;
+/** GET /api/v1/me. */
+export const MeView = z.strictObject({
+  name: z.string(),
+  initials: z.string(),
+  email: z.string(),
+  practice: z.string(),
+  roles: z.array(z.enum(ROLES)),
+  unit_system: z.enum(['metric', 'us']),
+});
+
+export const toMeView = (user: User): z.output<typeof MeView> => ({
+  name: user.name,
+  initials: user.initials,
+  email: user.email,
+  practice: user.practiceName,
+  roles: [...user.roles],
+  unit_system: user.unitSystem,
+});

@@ -57,7 +57,7 @@ export function Button({ tone, size, keyName, href, reason, reasonId, children, 
   );
   if (off) {
     return (
-      <span className="inline-flex flex-wrap items-center gap-x-10 gap-y-4">
+      <span className={size === 'block' ? 'grid' : 'inline-flex flex-wrap items-center gap-x-10 gap-y-4'}>
         <button
           type="button"
           aria-disabled="true"
@@ -67,7 +67,10 @@ export function Button({ tone, size, keyName, href, reason, reasonId, children, 
           {children}
         </button>
         {reason && (
-          <span id={ownId} className="text-note text-ink-2">
+          <span
+            id={ownId}
+            className={`text-note text-ink-2 ${size === 'block' ? 'px-10 py-6 text-center' : ''}`}
+          >
             {reason}
           </span>
         )}

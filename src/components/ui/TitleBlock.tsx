@@ -1,27 +1,7 @@
-import { type ReactNode, useId } from 'react';
-import { Button } from './Button';
+import type { ReactNode } from 'react';
+import { type BlockAction, MainAction, OtherActions } from './BlockActions';
+import { RevisionList, type RevisionRow } from './RevisionList';
 import { type SheetStatus, StatusStamp } from './StatusStamp';
-
-/** One thing the sheet can do. A form's id makes it the submit button of that form. */
-export interface BlockAction {
-  label: string;
-  keyName?: string | undefined;
-  href?: string | undefined;
-  form?: string | undefined;
-  name?: string | undefined;
-  value?: string | undefined;
-  onPress?: (() => void) | undefined;
-  /** Why it cannot be done now. */
-  reason?: string | undefined;
-}
-
-export interface RevisionRow {
-  revision: string;
-  date: string;
-  by: string;
-  checked?: string | undefined;
-  change: string;
-}
 
 export interface TitleBlockProps {
   /** The practice, or the job when `jobNumber` is given. */
@@ -130,94 +110,6 @@ export function Compartment({
       ) : (
         <p className={`${size} break-words ${signed ? 'italic' : ''}`}>{value}</p>
       )}
-    </div>
-  );
-}
-
-export function ActionButton({ action, tone }: { action: BlockAction; tone: 'inverted' | 'outlined' }) {
-  const { label, href, form, onPress, ...rest } = action;
-  return (
-    <Button
-      tone={tone}
-      size="block"
-      href={href}
-      keyName={rest.keyName}
-      form={form}
-      name={rest.name}
-      value={rest.value}
-      type={form ? 'submit' : 'button'}
-      onClick={onPress}
-    >
-      {label}
-    </Button>
-  );
-}
-
-function MainAction({ action }: { action: BlockAction }) {
-  const id = useId();
-  if (action.reason === undefined) {
-    return (
-      <div className="col-span-6 grid p-0 [&_button,&_a]:min-h-52 [&_button,&_a]:text-[1.0625rem]">
-        <ActionButton action={action} tone="inverted" />
-      </div>
-    );
-  }
-  return (
-    <>
-      <div className="col-span-6 grid p-0 [&_button,&_a]:min-h-52 [&_button,&_a]:text-[1.0625rem]">
-        <Button size="block" reasonId={id}>
-          {action.label}
-        </Button>
-      </div>
-      <p id={id} className="col-span-6 text-center text-schedule font-semibold text-error">
-        {action.reason}
-      </p>
-    </>
-  );
-}
-
-function OtherActions({ actions }: { actions: readonly BlockAction[] }) {
-  const span = actions.length === 1 ? 'col-span-6' : 'col-span-3';
-  return actions.map((action) => (
-    <div key={action.label} className={`grid p-0 ${span}`}>
-      {action.reason === undefined ? (
-        <ActionButton action={action} tone="outlined" />
-      ) : (
-        <Button size="block" reason={action.reason}>
-          {action.label}
-        </Button>
-      )}
-    </div>
-  ));
-}
-
-function RevisionList({ rows }: { rows: readonly RevisionRow[] }) {
-  return (
-    <div className="col-span-6 p-0">
-      <table className="w-full border-collapse text-left text-schedule leading-17">
-        <thead>
-          <tr className="caps">
-            <th scope="col" className="w-34 py-5 pl-10">
-              Rev
-            </th>
-            <th scope="col">Date</th>
-            <th scope="col">By</th>
-            <th scope="col">Chk</th>
-            <th scope="col">Change</th>
-          </tr>
-        </thead>
-        <tbody className="[&_td]:border-t [&_td]:border-rule [&_td]:py-5 [&_td]:pr-8 [&_td]:align-top">
-          {rows.map((row, index) => (
-            <tr key={row.revision} className={index === 0 ? '[&>td]:border-ink!' : ''}>
-              <td className={`pl-10 ${index === 0 ? 'font-semibold' : ''}`}>{row.revision}</td>
-              <td className="whitespace-nowrap">{row.date}</td>
-              <td className="italic">{row.by}</td>
-              <td className="italic">{row.checked ?? '–'}</td>
-              <td>{row.change}</td>
-            </tr>
-          ))}
-        </tbody>
-      </table>
     </div>
   );
 }

@@ -1,5 +1,6 @@
+import type { ReactNode } from 'react';
+import { ActionButton, type BlockAction } from './BlockActions';
 import { type SheetStatus, StatusStamp } from './StatusStamp';
-import { ActionButton, type BlockAction } from './TitleBlock';
 
 interface TitleStripProps {
   kind: string;
@@ -48,7 +49,7 @@ export function TitleStrip(props: TitleStripProps) {
   );
 }
 
-function Cell({ label, children }: { label: string; children: React.ReactNode }) {
+function Cell({ label, children }: { label: string; children: ReactNode }) {
   return (
     <div className="flex flex-col justify-center border-l border-ink px-16 whitespace-nowrap max-md:px-12 max-md:first:border-l-0">
       <span className="caps">{label}</span>

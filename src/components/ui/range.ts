@@ -2,9 +2,11 @@ import {
   type DimensionName,
   formatFeetInches,
   formatNumber,
+  formatQuantity,
   fromUnit,
   readQuantity,
   toUnit,
+  unitText,
 } from '@/engine/quantity';
 
 /** What a field holds: the text exactly as typed, and the unit shown beside it. */
@@ -84,4 +86,16 @@ export function entryFor(value: number, unit: string): QuantityEntry {
 export function changeUnit(entry: QuantityEntry, unit: string, dimension: DimensionName): QuantityEntry {
   const reading = readQuantity(entry.text, dimension, { unit: entry.unit });
   return reading.ok ? entryFor(reading.value, unit) : { text: entry.text, unit };
+}
+
+/** A range's end to four figures, without the zeros that would claim a precision nobody gave. */
+export const endText = (value: number, unit: string): string =>
+  unit === 'ft-in' ? formatQuantity(value, unit) : formatNumber(Number(toUnit(value, unit).toPrecision(4)));
+
+/** What is wrong with a value outside its range; nothing within it. */
+export function outOfRange(value: number, range: QuantityRange, unit: string): string | undefined {
+  const slack = 1e-9 * Math.max(Math.abs(range.low), Math.abs(range.high)); // rounding of unit conversions
+  if (value >= range.low - slack && value <= range.high + slack) return undefined;
+  const shown = unit === 'ft-in' ? '' : ` ${unitText(unit)}`.trimEnd();
+  return `Must be ${endText(range.low, unit)} to ${endText(range.high, unit)}${shown}.`;
 }

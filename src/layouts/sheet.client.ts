@@ -1,0 +1,87 @@
+import { createKeyReader, takesTyping } from '@/components/ui/keys';
+import { keysAreOn } from '@/components/ui/use-keys';
+
+const RING_MS = 600;
+const YEAR_S = 31_536_000;
+const SHARE_IN_VIEW = 0.35; // of the title block; with less of it the title strip stands in
+
+function goToZone(letter: string) {
+  const zone = document.querySelector<HTMLElement>(`[data-zone="${letter}"]`);
+  if (!zone) return;
+  zone.scrollIntoView({ block: 'start', behavior: 'instant' });
+  zone.focus({ preventScroll: true });
+  zone.dataset['ringed'] = '';
+  setTimeout(() => delete zone.dataset['ringed'], RING_MS);
+}
+
+function openKeys() {
+  document.querySelector<HTMLDialogElement>('dialog[data-keys-list]')?.showModal();
+}
+
+function listenForKeys() {
+  const read = createKeyReader();
+  document.addEventListener('keydown', (event) => {
+    if (event.defaultPrevented || !keysAreOn() || document.querySelector('dialog[open]')) return;
+    const typing = event.target instanceof HTMLElement && takesTyping(event.target);
+    const press = read(event, typing, event.timeStamp);
+    if (press?.kind === 'zone') {
+      event.preventDefault();
+      goToZone(press.letter);
+    } else if (press?.key === '?') {
+      openKeys();
+    } else if (press?.key === '/') {
+      const search = document.querySelector<HTMLElement>('[data-search]');
+      if (!search) return;
+      event.preventDefault();
+      search.focus();
+    }
+  });
+  for (const button of document.querySelectorAll('[data-open-keys]'))
+    button.addEventListener('click', openKeys);
+}
+
+function listenForTheme() {
+  for (const form of document.querySelectorAll<HTMLFormElement>('[data-theme-switch]')) {
+    form.addEventListener('submit', (event) => {
+      if (!(event.submitter instanceof HTMLButtonElement)) return;
+      event.preventDefault();
+      const theme = event.submitter.value;
+      document.documentElement.dataset['theme'] = theme;
+      const secure = location.protocol === 'https:' ? '; Secure' : '';
+      // biome-ignore lint/suspicious/noDocumentCookie: cookieStore is missing where the page is not served by https
+      document.cookie = `theme=${theme}; Path=/; Max-Age=${YEAR_S}; SameSite=Lax${secure}`;
+    });
+  }
+}
+
+function watchTitleBlock() {
+  const block = document.querySelector('[data-title-block]');
+  const strip = document.querySelector<HTMLElement>('[data-title-strip]');
+  if (!block || !strip) return;
+  const show = (on: boolean) => {
+    strip.toggleAttribute('data-on', on);
+    strip.inert = !on;
+  };
+  new IntersectionObserver(([entry]) => entry && show(entry.intersectionRatio < SHARE_IN_VIEW), {
+    threshold: [0, SHARE_IN_VIEW],
+  }).observe(block);
+}
+
+function closeMenusOnLeaving() {
+  for (const menu of document.querySelectorAll<HTMLDetailsElement>('details[data-menu]')) {
+    const close = () => menu.removeAttribute('open');
+    menu.addEventListener('keydown', (event) => {
+      if (event.key !== 'Escape') return;
+      close();
+      menu.querySelector('summary')?.focus();
+    });
+    document.addEventListener('click', (event) => {
+      if (event.target instanceof Node && !menu.contains(event.target)) close();
+    });
+  }
+}
+
+listenForKeys();
+listenForTheme();
+watchTitleBlock();
+closeMenusOnLeaving();

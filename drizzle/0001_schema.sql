@@ -38,11 +38,11 @@ CREATE TABLE "person" (
 	"email" text NOT NULL,
 	"name" text NOT NULL,
 	"initials" text NOT NULL,
-	"unit_system" text DEFAULT 'SI' NOT NULL,
+	"unit_system" text DEFAULT 'metric' NOT NULL,
 	"created_at" timestamp with time zone DEFAULT now() NOT NULL,
 	CONSTRAINT "person_email_unique" UNIQUE("email"),
 	CONSTRAINT "person_email_lower_case" CHECK ("person"."email" = lower("person"."email")),
-	CONSTRAINT "person_unit_system" CHECK ("person"."unit_system" in ('SI', 'US'))
+	CONSTRAINT "person_unit_system" CHECK ("person"."unit_system" in ('metric', 'us'))
 );
 --> statement-breakpoint
 ALTER TABLE "person" ENABLE ROW LEVEL SECURITY;--> statement-breakpoint
@@ -110,7 +110,7 @@ CREATE TABLE "job" (
 	"client" text DEFAULT '' NOT NULL,
 	"area" text DEFAULT '' NOT NULL,
 	"basis" text DEFAULT '' NOT NULL,
-	"unit_system" text DEFAULT 'SI' NOT NULL,
+	"unit_system" text DEFAULT 'metric' NOT NULL,
 	"access" text DEFAULT 'practice' NOT NULL,
 	"status" text DEFAULT 'open' NOT NULL,
 	"version" integer DEFAULT 1 NOT NULL,
@@ -118,7 +118,7 @@ CREATE TABLE "job" (
 	"created_at" timestamp with time zone DEFAULT now() NOT NULL,
 	"changed_at" timestamp with time zone DEFAULT now() NOT NULL,
 	CONSTRAINT "job_practice_id_id_pk" PRIMARY KEY("practice_id","id"),
-	CONSTRAINT "job_unit_system" CHECK ("job"."unit_system" in ('SI', 'US')),
+	CONSTRAINT "job_unit_system" CHECK ("job"."unit_system" in ('metric', 'us')),
 	CONSTRAINT "job_access" CHECK ("job"."access" in ('practice', 'named')),
 	CONSTRAINT "job_status" CHECK ("job"."status" in ('open', 'closed'))
 );

@@ -23,7 +23,7 @@ import {
   oneOf,
   practiceId,
   tenantPolicy,
-  UNIT_SYSTEMS,
+  UNIT_SYSTEM_NAMES,
   web,
   words,
 } from './tenant';
@@ -48,12 +48,12 @@ export const person = pgTable(
     email: text().notNull().unique(),
     name: text().notNull(),
     initials: text().notNull(),
-    unitSystem: text({ enum: UNIT_SYSTEMS }).notNull().default('SI'),
+    unitSystem: text({ enum: UNIT_SYSTEM_NAMES }).notNull().default('metric'),
     createdAt: now(),
   },
   (table) => [
     check('person_email_lower_case', sql`${table.email} = lower(${table.email})`),
-    check('person_unit_system', oneOf(table.unitSystem, UNIT_SYSTEMS)),
+    check('person_unit_system', oneOf(table.unitSystem, UNIT_SYSTEM_NAMES)),
     pgPolicy('person_of_practice', {
       for: 'select',
       to: web,

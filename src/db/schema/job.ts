@@ -21,7 +21,7 @@ import {
   oneOf,
   practiceId,
   tenantPolicy,
-  UNIT_SYSTEMS,
+  UNIT_SYSTEM_NAMES,
   web,
 } from './tenant';
 
@@ -39,7 +39,7 @@ export const job = pgTable(
     client: text().notNull().default(''),
     area: text().notNull().default(''),
     basis: text().notNull().default(''),
-    unitSystem: text({ enum: UNIT_SYSTEMS }).notNull().default('SI'),
+    unitSystem: text({ enum: UNIT_SYSTEM_NAMES }).notNull().default('metric'),
     access: text({ enum: JOB_ACCESS }).notNull().default('practice'),
     status: text({ enum: JOB_STATUSES }).notNull().default('open'),
     version: integer().notNull().default(1),
@@ -51,7 +51,7 @@ export const job = pgTable(
     primaryKey({ columns: [table.practiceId, table.id] }),
     ofMember('job_created_by_fk', table.practiceId, table.createdById),
     uniqueIndex('job_number').on(table.practiceId, table.number),
-    check('job_unit_system', oneOf(table.unitSystem, UNIT_SYSTEMS)),
+    check('job_unit_system', oneOf(table.unitSystem, UNIT_SYSTEM_NAMES)),
     check('job_access', oneOf(table.access, JOB_ACCESS)),
     check('job_status', oneOf(table.status, JOB_STATUSES)),
     pgPolicy('job_open_to_person', {

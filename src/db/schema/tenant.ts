@@ -1,5 +1,6 @@
 import { sql } from 'drizzle-orm';
 import { type AnyPgColumn, pgPolicy, pgRole, timestamp, uuid } from 'drizzle-orm/pg-core';
+import type { UnitSystemName } from '@/engine/quantity';
 
 /** What the web and worker connections may do is granted to this role; a login role is a member of it. */
 export const web = pgRole('putlog_web').existing();
@@ -7,7 +8,7 @@ export const web = pgRole('putlog_web').existing();
 export const now = () => timestamp({ withTimezone: true }).notNull().defaultNow();
 export const moment = () => timestamp({ withTimezone: true });
 
-export const UNIT_SYSTEMS = ['SI', 'US'] as const;
+export const UNIT_SYSTEM_NAMES = ['metric', 'us'] as const satisfies readonly UnitSystemName[];
 
 /** The tenant key. It leads every primary key and index, so that the tables can be distributed by practice. */
 export const practiceId = () => uuid('practice_id').notNull();

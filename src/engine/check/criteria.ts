@@ -1,0 +1,60 @@
+import { z } from 'zod';
+
+/** Load groups a member's loads may belong to, in the order they stack on a drawing and in a table. */
+export const LOAD_GROUPS = ['G', 'Q', 'S', 'W'] as const;
+export type LoadGroup = (typeof LOAD_GROUPS)[number];
+export const LOAD_GROUP_NAMES: Record<LoadGroup, string> = {
+  G: 'permanent',
+  Q: 'imposed',
+  S: 'snow',
+  W: 'wind',
+};
+
+const factors = z.partialRecord(z.enum(LOAD_GROUPS), z.number().finite());
+const combination = z.strictObject({ name: z.string().min(1), factors });
+const source = z.strictObject({
+  publication: z.string().min(1),
+  clause: z.string().min(1),
+  /** Typed from memory: a librarian of the practice confirms it against the print before relying on it. */
+  from_memory: z.boolean(),
+});
+
+const strength = z.strictObject({
+  /** In words, printed on the sheet: what the factors are and what they stand for. */
+  basis: z.string().min(1),
+  combinations: z.array(combination).min(1),
+  /** Greatest bending stress as a share of the material's bending strength (yield for steel). */
+  bending: z.number().positive(),
+  /** Greatest shear stress as a share of the material's shear strength (yield for steel, f_v for timber). */
+  shear: z.number().positive(),
+  source,
+});
+
+/** A limit on a deflection: span/ratio, and an absolute cap where one is given; the lower governs. */
+const deflectionLimit = z.strictObject({
+  name: z.string().min(1),
+  combination,
+  span_ratio: z.number().positive(),
+  /** The overhang's length is multiplied by this before the ratio: 2 where the source says so. */
+  overhang_factor: z.number().positive(),
+  overhang_ratio: z.number().positive(),
+  /** m */
+  cap: z.number().positive().optional(),
+  source,
+});
+
+/** What a member is judged by: a governed document of the practice. Lengths m; factors dimensionless. */
+export const criteriaDocument = z.strictObject({
+  schema_version: z.literal(1),
+  slug: z.string().regex(/^[a-z0-9-]+$/),
+  reference: z.string().min(1),
+  name: z.string().min(1),
+  summary: z.string().min(1),
+  families: z.array(z.enum(['steel', 'timber'])).min(1),
+  strength,
+  deflection: z.array(deflectionLimit).min(1),
+  not_checked: z.array(z.string().min(1)).min(1),
+});
+export type Criteria = z.infer<typeof criteriaDocument>;
+export type Combination = z.infer<typeof combination>;
+export type DeflectionLimit = z.infer<typeof deflectionLimit>;

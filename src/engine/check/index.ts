@@ -1,0 +1,21 @@
+export {
+  type Combination,
+  type Criteria,
+  criteriaDocument,
+  type DeflectionLimit,
+  LOAD_GROUP_NAMES,
+  LOAD_GROUPS,
+  type LoadGroup,
+} from './criteria';
+export { checkMember } from './member';
+export { letteredSupports, regionsOf, supportLetter } from './regions';
+export type {
+  Arrangement,
+  CheckKind,
+  CheckRow,
+  ElasticSection,
+  Finding,
+  MemberChecks,
+  Region,
+  ServiceArrangement,
+} from './types';

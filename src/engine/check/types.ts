@@ -1,0 +1,65 @@
+import type { Solution } from '../beam/index';
+import type { DimensionName } from '../quantity/index';
+import type { Combination, DeflectionLimit } from './criteria';
+
+/** One combination's loads, all at once, solved as one beam: a real load arrangement, never an envelope. */
+export type Arrangement = { readonly combination: Combination; readonly solution: Solution };
+
+/** What the elastic checks ask of a section and its material. SI: m³, m², Pa. */
+export type ElasticSection = {
+  readonly designation: string;
+  /** The smaller elastic modulus about the major axis. */
+  readonly elasticModulus: number;
+  /** I·t/Q where the shear stress is greatest: 2/3 A of a rectangle. */
+  readonly shearAreaAtAxis: number;
+  /** Yield strength of steel, f_m,k or F_b of timber. */
+  readonly bendingStrength: number;
+  /** Yield strength of steel, f_v,k or F_v of timber. */
+  readonly shearStrength: number;
+};
+
+/** A stretch of the beam between two vertical supports, or beyond the last: lengths and positions in m. */
+export type Region = {
+  readonly kind: 'span' | 'overhang';
+  readonly from: number;
+  readonly to: number;
+  /** "span A–B", "overhang beyond B". */
+  readonly name: string;
+};
+
+export type CheckKind = 'bending' | 'shear' | 'deflection';
+
+/** One judged figure. `ratio` = demand/capacity, unrounded; it passes at ratio ≤ 1. `at`: m from the left end. */
+export type CheckRow = {
+  readonly id: string;
+  readonly kind: CheckKind;
+  readonly title: string;
+  /** Where and under what: "at A, 1.35 G + 1.5 Q". */
+  readonly place: string;
+  readonly clause: string;
+  readonly demand: number;
+  readonly capacity: number;
+  readonly dimension: DimensionName;
+  readonly ratio: number;
+  readonly combination: string;
+  readonly at: number;
+  readonly symbols: string;
+  readonly numbers: string;
+};
+
+/** Something that no ratio judges and that must not be missed, such as a support that is pulled up. */
+export type Finding = {
+  readonly id: string;
+  readonly title: string;
+  readonly detail: string;
+  readonly at: number;
+};
+
+export type MemberChecks = {
+  /** Governing first. */
+  readonly rows: readonly CheckRow[];
+  readonly findings: readonly Finding[];
+  readonly notChecked: readonly string[];
+};
+
+export type ServiceArrangement = { readonly limit: DeflectionLimit; readonly solution: Solution };

@@ -1,1 +1,13 @@
+export { describeMotion, releaseMechanism } from './motion';
+export { readBeam } from './read';
+export { COINCIDENT } from './reader';
+export {
+  admissibleSets,
+  checkRedundants,
+  defaultRedundants,
+  eligibleRedundants,
+  placeRedundant,
+} from './redundants';
+export { type Frame, findMotion, frameOf, type MovingPart, riseOf } from './stability';
 export * from './types';
+export { nameRedundant, nameSupport } from './words';

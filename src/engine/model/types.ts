@@ -97,7 +97,16 @@ export type FaultCode =
   | 'ineligible_redundant'
   | 'inadmissible_redundants';
 
+/** Corners of a displaced shape that is straight between them; the largest deflection is 1. */
+export type DisplacedShape = { x: number; deflection: number }[];
+
 /** What is wrong with the person's data: where, which rule, and words that say what to do. */
-export type Fault = { path: (string | number)[]; code: FaultCode; message: string };
+export type Fault = {
+  path: (string | number)[];
+  code: FaultCode;
+  message: string;
+  /** How the beam moves, where it is a mechanism; for a drawing. */
+  motion?: DisplacedShape | undefined;
+};
 
 export type Reading<T> = { ok: true; value: T } | { ok: false; faults: Fault[] };

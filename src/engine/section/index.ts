@@ -1,0 +1,30 @@
+export {
+  asciiDesignation,
+  type DesignationParts,
+  designationKey,
+  designationParts,
+  designationRank,
+} from './designation';
+export {
+  type ChannelDimensions,
+  cornerRadii,
+  type DimensionFault,
+  depthOf,
+  designWall,
+  dimensionFaults,
+  type IDimensions,
+  ImpossibleSection,
+  type RectangleDimensions,
+  type RoundBarDimensions,
+  type RoundTubeDimensions,
+  SECTION_SHAPES,
+  type SectionDimensions,
+  type SectionShape,
+  TUBE_STANDARDS,
+  type TubeDimensions,
+  type TubeStandard,
+  tube,
+  widthOf,
+} from './dimensions';
+export { type Corner, outlineCorners, outlinePath, type Rounding, roundCorners } from './outline';
+export { type SectionProperties, sectionProperties } from './properties';

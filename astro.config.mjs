@@ -2,12 +2,47 @@ import mdx from '@astrojs/mdx';
 import node from '@astrojs/node';
 import react from '@astrojs/react';
 import tailwindcss from '@tailwindcss/vite';
-import { defineConfig } from 'astro/config';
+import { defineConfig, envField } from 'astro/config';
+
+const secret = { context: 'server', access: 'secret' };
 
 export default defineConfig({
   output: 'server',
   adapter: node({ mode: 'middleware' }),
   integrations: [react(), mdx()],
   build: { inlineStylesheets: 'never' },
+  devToolbar: { enabled: false },
+  // Sessions are rows of ours; without a driver the adapter would keep files of its own.
+  session: { driver: 'null' },
+  security: {
+    // Ours, in src/middleware.ts, covers every body type and knows the origin only when the server starts.
+    checkOrigin: false,
+    // The server in front sets Host from ORIGIN, whatever the client sent.
+    allowedDomains: [{}],
+  },
+  env: {
+    schema: {
+      DATABASE_URL: envField.string({ ...secret, startsWith: 'postgres' }),
+      DATABASE_POOL: envField.number({ ...secret, int: true, min: 1, max: 500, default: 10 }),
+      /** Where people reach the product: scheme, host and port, without a path. */
+      ORIGIN: envField.string({ ...secret, url: true }),
+      /** Shows the demo practice's people and their password on the sign-in page. */
+      PUTLOG_DEMO: envField.enum({ ...secret, values: ['0', '1'], default: '0' }),
+    },
+  },
+  experimental: {
+    csp: {
+      directives: [
+        "default-src 'none'",
+        "img-src 'self' data: blob:",
+        "font-src 'self'",
+        "connect-src 'self'",
+        "worker-src 'self' blob:",
+        "manifest-src 'self'",
+        "base-uri 'none'",
+        "form-action 'self'",
+      ],
+    },
+  },
   vite: { plugins: [tailwindcss()] },
 });

@@ -35,6 +35,9 @@ export interface List<T> {
 export const listOf = <S extends z.ZodType>(item: S) =>
   z.strictObject({ items: z.array(item), next: z.string().nullable(), total: z.int() });
 
+/** A list that is short by nature, on one page. */
+export const wholeList = <T>(items: readonly T[]): List<T> => ({ items, next: null, total: items.length });
+
 /** A place in a list, opaque to whoever holds it. */
 export const writeCursor = (place: unknown): string =>
   Buffer.from(JSON.stringify(place)).toString('base64url');

@@ -32,6 +32,23 @@ describe('a write', () => {
     expect(check(null, 'https://elsewhere.example')).toThrow(expect.objectContaining({ status: 403 }));
   });
 
+  test('on the machine itself may call it by another name', () => {
+    const from = (origin: string) => () =>
+      checkOrigin(
+        new Request(OURS, { method: 'POST', headers: { origin } }),
+        'http://localhost:4321',
+        'session',
+      );
+    for (const origin of ['http://localhost:4321', 'http://127.0.0.1:4321', 'http://[::1]:4321'])
+      expect(from(origin)).not.toThrow();
+    for (const origin of [
+      'http://127.0.0.1:4000',
+      'https://127.0.0.1:4321',
+      'http://127.0.0.1.elsewhere.example:4321',
+    ])
+      expect(from(origin)).toThrow();
+  });
+
   test.each(['PUT', 'PATCH', 'DELETE'])('may be a %s as well', (method) => {
     expect(check('session', 'https://elsewhere.example', method)).toThrow();
   });

@@ -8,7 +8,7 @@ import { hashSecret } from '@/lib/secret';
 export const ATTEMPTS = { account: 10, address: 60, windowMinutes: 15 } as const;
 
 const WINDOW = ATTEMPTS.windowMinutes * 60_000; // ms
-const KEPT = 24 * 3_600_000; // ms
+export const KEPT = 24 * 3_600_000; // ms
 
 export type Admission =
   | { readonly admitted: true; readonly attemptId: string }

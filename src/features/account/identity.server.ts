@@ -1,5 +1,5 @@
 import { eq, sql } from 'drizzle-orm';
-import { apiToken, membership, session } from '@/db/schema/account';
+import { apiToken, membership, person, session } from '@/db/schema/account';
 import { withoutPractice, withPractice } from '@/db/tenancy';
 import { hashSecret } from '@/lib/secret';
 import type { User } from './account';
@@ -16,23 +16,23 @@ const who = {
   email: sql<string>`email`,
   name: sql<string>`name`,
   initials: sql<string>`initials`,
-  unitSystem: sql<string>`unit_system`,
+  unitSystem: sql`unit_system`.mapWith(person.unitSystem),
   roles: sql`roles`.mapWith(membership.roles),
 };
 
-interface Found extends Omit<User, 'unitSystem' | 'via'> {
-  readonly unitSystem: string;
-}
-
-const toUser = (found: Found, via: User['via']): User => ({
-  practiceId: found.practiceId,
-  practiceName: found.practiceName,
-  personId: found.personId,
-  email: found.email,
-  name: found.name,
-  initials: found.initials,
-  roles: found.roles,
-  unitSystem: found.unitSystem.toLowerCase() === 'us' ? 'us' : 'metric',
+/** The row of either lookup without what only it has. */
+const toUser = (
+  { practiceId, practiceName, personId, email, name, initials, unitSystem, roles }: Omit<User, 'via'>,
+  via: User['via'],
+): User => ({
+  practiceId,
+  practiceName,
+  personId,
+  email,
+  name,
+  initials,
+  unitSystem,
+  roles,
   via,
 });
 

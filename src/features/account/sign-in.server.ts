@@ -1,6 +1,7 @@
 import { sql } from 'drizzle-orm';
 import { withoutPractice, withPractice } from '@/db/tenancy';
 import { recordAudit } from '@/features/audit/audit.server';
+import { AppError } from '@/lib/app-error';
 import { read } from '@/lib/read';
 import { localPath } from '@/paths';
 import { SignIn } from './account';
@@ -17,9 +18,13 @@ export interface SignInErrors {
   readonly form?: string;
 }
 
-export type SignInResult =
-  | { readonly ok: true; readonly token: string }
-  | { readonly ok: false; readonly fieldErrors: SignInErrors; readonly retryAfterSeconds: number | null };
+interface RefusedSignIn {
+  readonly ok: false;
+  readonly fieldErrors: SignInErrors;
+  readonly retryAfterSeconds: number | null;
+}
+
+export type SignInResult = { readonly ok: true; readonly token: string } | RefusedSignIn;
 
 const refused = (fieldErrors: SignInErrors, retryAfterSeconds: number | null = null): SignInResult => ({
   ok: false,
@@ -72,6 +77,25 @@ const recordRefusal = (account: { practiceId: string; personId: string }, from: 
       },
     ),
   );
+
+/** A refused sign-in as an endpoint's refusal. */
+export function signInRefusal({ fieldErrors, retryAfterSeconds }: RefusedSignIn): AppError {
+  const faults = Object.entries(fieldErrors).map(([field, message]) => ({
+    pointer: field === 'form' ? '' : `/${field}`,
+    code: 'refused',
+    message,
+  }));
+  const detail = faults[0]?.message ?? 'Sign in again.';
+  return retryAfterSeconds === null
+    ? new AppError('unauthenticated', detail, {
+        faults,
+        headers: { 'WWW-Authenticate': 'Bearer realm="putlog"' },
+      })
+    : new AppError('too_many_requests', detail, {
+        faults,
+        headers: { 'Retry-After': String(retryAfterSeconds) },
+      });
+}
 
 export function waitWords(seconds: number): string {
   const minutes = Math.ceil(seconds / 60);

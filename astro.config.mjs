@@ -27,7 +27,7 @@ export default defineConfig({
       /** Where people reach the product: scheme, host and port, without a path. */
       ORIGIN: envField.string({ ...secret, url: true }),
       /** Shows the demo practice's people and their password on the sign-in page. */
-      PUTLOG_DEMO: envField.enum({ ...secret, values: ['0', '1'], default: '0' }),
+      DEMO: envField.boolean({ ...secret, default: false }),
     },
   },
   experimental: {

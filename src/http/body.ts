@@ -28,29 +28,50 @@ export async function readBody({ request }: Holder): Promise<unknown> {
       `The content type is ${type ? `“${type}”` : 'missing'}. Send application/json.`,
       { headers: { Accept: 'application/json' } },
     );
-  const value = parse(await readText(request));
+  const value = parse(decode(await readBytes(request)));
   const fault = unsafePart(value);
   if (fault) throw invalid([fault]);
   return value;
 }
 
-async function readText(request: Request): Promise<string> {
-  if (Number(request.headers.get('content-length') ?? 0) > BODY_LIMIT) throw tooLarge();
-  const decoder = new TextDecoder('utf-8', { fatal: true });
-  let size = 0;
-  let text = '';
+const FORM_TYPES = ['application/x-www-form-urlencoded', 'multipart/form-data'];
+
+/** A page's form. */
+export async function readForm({ request }: Holder): Promise<FormData> {
+  const type = request.headers.get('content-type') ?? '';
+  if (!FORM_TYPES.some((form) => type.toLowerCase().startsWith(form)))
+    throw new AppError('unsupported_media_type', 'This is not a form. Use the page.');
+  const body = await readBytes(request);
   try {
-    // Leaving the loop cancels the stream: what is too long is not read to its end.
-    for await (const chunk of request.body ?? []) {
-      size += chunk.byteLength;
-      if (size > BODY_LIMIT) throw tooLarge();
-      text += decoder.decode(chunk, { stream: true });
-    }
-    return text + decoder.decode();
+    return await new Response(body, { headers: { 'Content-Type': type } }).formData();
   } catch (error) {
-    if (error instanceof TypeError)
-      throw new AppError('bad_json', 'The body is not UTF-8 text.', { cause: error });
-    throw error;
+    throw new AppError('invalid', 'The form cannot be read. Send it again from the page.', { cause: error });
+  }
+}
+
+async function readBytes(request: Request): Promise<Uint8Array<ArrayBuffer>> {
+  if (Number(request.headers.get('content-length') ?? 0) > BODY_LIMIT) throw tooLarge();
+  const chunks: Uint8Array[] = [];
+  let size = 0;
+  // Leaving the loop cancels the stream: what is too long is not read to its end.
+  for await (const chunk of request.body ?? []) {
+    size += chunk.byteLength;
+    if (size > BODY_LIMIT) throw tooLarge();
+    chunks.push(chunk);
+  }
+  const whole = new Uint8Array(size);
+  chunks.reduce((at, chunk) => {
+    whole.set(chunk, at);
+    return at + chunk.byteLength;
+  }, 0);
+  return whole;
+}
+
+function decode(bytes: Uint8Array): string {
+  try {
+    return new TextDecoder('utf-8', { fatal: true }).decode(bytes);
+  } catch (error) {
+    throw new AppError('bad_json', 'The body is not UTF-8 text.', { cause: error });
   }
 }
 

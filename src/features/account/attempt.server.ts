@@ -1,4 +1,4 @@
-import { and, desc, eq, gt, lt, or, type SQL, sql } from 'drizzle-orm';
+import { and, desc, eq, gt, type SQL, sql } from 'drizzle-orm';
 import type { Tx } from '@/db/client';
 import { signInAttempt } from '@/db/schema/account';
 import { withoutPractice } from '@/db/tenancy';
@@ -8,6 +8,7 @@ import { hashSecret } from '@/lib/secret';
 export const ATTEMPTS = { account: 10, address: 60, windowMinutes: 15 } as const;
 
 const WINDOW = ATTEMPTS.windowMinutes * 60_000; // ms
+/** How long attempts are kept: past it none counts. */
 export const KEPT = 24 * 3_600_000; // ms
 
 export type Admission =
@@ -27,9 +28,6 @@ export async function admitAttempt(email: string, address: string, now: Date): P
       await tx.execute(sql`select pg_advisory_xact_lock(hashtextextended(${key}, 0))`);
     const sameAccount = eq(signInAttempt.accountHash, accountHash);
     const sameAddress = eq(signInAttempt.addressHash, addressHash);
-    await tx
-      .delete(signInAttempt)
-      .where(and(or(sameAccount, sameAddress), lt(signInAttempt.at, new Date(now.getTime() - KEPT))));
     const free = Math.max(
       await freeFrom(tx, sameAccount, ATTEMPTS.account, now, await lastSuccess(tx, sameAccount)),
       await freeFrom(tx, sameAddress, ATTEMPTS.address, now, 0),

@@ -1,4 +1,4 @@
-import { and, desc, eq, gt, lte, ne, or } from 'drizzle-orm';
+import { and, desc, eq, gt, ne } from 'drizzle-orm';
 import type { Tx } from '@/db/client';
 import { session } from '@/db/schema/account';
 import { type Tenant, withPractice } from '@/db/tenancy';
@@ -10,7 +10,7 @@ import { deviceName, type RequestSource, SESSION_HOURS, type SessionView } from 
 
 const HOUR = 3_600_000; // ms
 
-/** Begins a session and gives its token, which is known to the browser alone. Sessions that are over go. */
+/** Begins a session and gives its token, which is known to the browser alone. */
 export async function startSession(
   tx: Tx,
   tenant: Tenant & { personId: string },
@@ -18,11 +18,6 @@ export async function startSession(
   now: Date,
 ): Promise<string> {
   const token = newSecret();
-  await tx
-    .delete(session)
-    .where(
-      and(ownSessions(tenant), or(lte(session.expiresAt, now), lte(session.lastSeenAt, idleSince(now)))),
-    );
   await tx.insert(session).values({
     practiceId: tenant.practiceId,
     personId: tenant.personId,
@@ -31,7 +26,7 @@ export async function startSession(
     lastSeenAt: now,
     expiresAt: new Date(now.getTime() + SESSION_HOURS.absolute * HOUR),
     address: from.address,
-    agent: from.agent?.slice(0, 300) ?? null,
+    agent: from.agent,
   });
   await recordAudit(tx, tenant, {
     action: 'session.start',

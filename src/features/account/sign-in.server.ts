@@ -114,7 +114,7 @@ export const sourceOf = ({
   clientAddress,
 }: Pick<SignInContext, 'request' | 'clientAddress'>): RequestSource => ({
   address: clientAddress,
-  agent: request.headers.get('user-agent'),
+  agent: request.headers.get('user-agent')?.slice(0, 300) ?? null,
 });
 
 export type PageSignIn =

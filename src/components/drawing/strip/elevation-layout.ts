@@ -1,0 +1,155 @@
+import type { Beam } from '@/engine/model/index';
+import { type DrawingFormat, dimensionFigure, figure, named } from '../format';
+import { dimensionRows, type NamedLength } from '../geometry/dimensions';
+import { drawnDepth } from '../geometry/scale';
+import { textWidth } from '../geometry/text-width';
+import { namedSupports } from '../names';
+import { forceArrow, turnArrow } from '../signs';
+import type { Figure, LoadName } from './figures';
+import { type Frame, xOf } from './frame';
+import { type LoadLayout, layLoads } from './load-layout';
+
+/** A support's pull on the beam, N and N·m in the engine's signs; `least` is the other end of an envelope's range. */
+export type DrawnReaction = {
+  at: number;
+  vertical: number;
+  moment: number;
+  least?: { vertical: number; moment: number } | undefined;
+};
+
+export type Symbols = {
+  /** Lengths that have a name; other dimensions show their figure alone. */
+  lengths?: readonly NamedLength[] | undefined;
+  /** By the load's place in the beam. */
+  loads?: readonly (LoadName | undefined)[] | undefined;
+};
+
+export type DimensionRow = { y: number; from: number; xs: number[]; pairs: [number, number][] };
+
+export type ElevationLayout = {
+  top: number;
+  centre: number;
+  bottom: number;
+  loads: LoadLayout;
+  dimensions: DimensionRow[];
+  figures: Figure[];
+  /** Height of the drawing itself, and of the line of reactions under it on a phone. */
+  height: number;
+  reactionHeight: number;
+};
+
+const FIGURE_SIZE = 13.5;
+const ROW = 28;
+
+function layDimensions(
+  beam: Beam,
+  lengths: readonly NamedLength[],
+  frame: Frame,
+  format: DrawingFormat,
+  first: number,
+) {
+  const rows: DimensionRow[] = [];
+  const figures: Figure[] = [];
+  dimensionRows(beam, lengths).forEach((parts, i) => {
+    const y = first + i * ROW;
+    const xs = [...new Set(parts.flatMap(({ from, to }) => [xOf(frame, from), xOf(frame, to)]))];
+    rows.push({
+      y,
+      from: i === 0 ? first - 28 : y - 20,
+      xs,
+      pairs: parts.map(({ from, to }) => [xOf(frame, from), xOf(frame, to)]),
+    });
+    for (const { from, to, name } of parts) {
+      const text = named(name?.symbol, dimensionFigure(format, to - from));
+      const fits = textWidth(text, FIGURE_SIZE) + 6 <= (to - from) * frame.perMetre;
+      if (!fits && !name) continue;
+      const edits = name?.editable ? name.symbol : undefined;
+      figures.push({ x: xOf(frame, (from + to) / 2), y: y - 6, text, anchor: 'middle', edits });
+    }
+  });
+  return { rows, figures, end: first + (rows.length - 1) * ROW };
+}
+
+/** What hangs below the member: symbols, reactions beside them, and an arrow where a support moves. */
+function roomBelow(beam: Beam): number {
+  const moves = beam.supports.some(
+    ({ vertical, rotation }) =>
+      (vertical.kind !== 'free' && vertical.movement !== 0) ||
+      (rotation.kind !== 'free' && rotation.movement !== 0),
+  );
+  return moves ? 84 : 56;
+}
+
+const onPhoneLines = (beam: Beam): number =>
+  Math.ceil(
+    namedSupports(beam).reduce(
+      (sum, { support }) =>
+        sum + (support.vertical.kind === 'free' ? 0 : 1) + (support.rotation.kind === 'free' ? 0 : 1),
+      0,
+    ) / 3,
+  );
+
+export function layElevation(
+  beam: Beam,
+  frame: Frame,
+  format: DrawingFormat,
+  { depth, symbols = {}, reactions }: { depth: number; symbols?: Symbols | undefined; reactions: boolean },
+): ElevationLayout {
+  const loads = layLoads({ frame, format, names: symbols.loads ?? [] }, beam.loads);
+  const tall = drawnDepth(depth, frame.perMetre, frame.depthMost);
+  const wall = 26 * frame.supportScale;
+  // A moment's value stands over the member's end, under the heading and the reading.
+  const top = Math.max(loads.height + 14, wall + 28, 84 - tall / 2);
+  const bottom = top + tall;
+  const first = bottom + roomBelow(beam) - (frame.mode === 'screen' ? 0 : 6);
+  const dimensions = layDimensions(beam, symbols.lengths ?? [], frame, format, first);
+  const lines = frame.mode === 'phone' && reactions ? onPhoneLines(beam) : 0;
+  return {
+    top,
+    centre: top + tall / 2,
+    bottom,
+    loads,
+    dimensions: dimensions.rows,
+    figures: [...loads.figures.map((each) => ({ ...each, y: top + each.y })), ...dimensions.figures],
+    height: dimensions.end + 14,
+    reactionHeight: lines === 0 ? 0 : 10 + lines * 20,
+  };
+}
+
+export type ReactionMark = {
+  letter: string;
+  at: number;
+  kind: 'vertical' | 'moment';
+  text: string;
+  note?: string;
+  sense: number;
+};
+
+/** Sizes as printed beside the arrows, "R_{A} 72.3 kN"; `sense` is 0 where the reaction is nothing, else its engine sign. */
+export function reactionMarks(
+  beam: Beam,
+  reactions: readonly DrawnReaction[],
+  format: DrawingFormat,
+): ReactionMark[] {
+  const largest = Math.max(
+    0,
+    ...reactions.flatMap(({ vertical, moment }) => [Math.abs(vertical), Math.abs(moment) / beam.length]),
+  );
+  const sense = (value: number) => (Math.abs(value) > largest * 1e-9 ? Math.sign(value) : 0);
+  return namedSupports(beam).flatMap(({ support, letter }) => {
+    const reaction = reactions.find(({ at }) => Math.abs(at - support.at) < beam.length * 1e-6);
+    if (!reaction) return [];
+    const { vertical, moment, least } = reaction;
+    const marks: ReactionMark[] = [];
+    if (support.vertical.kind !== 'free') {
+      const note = least ? { note: `least ${format.value('force', least.vertical)}` } : {};
+      const text = `R_{${letter}} ${figure(format, 'force', forceArrow(vertical).size)}`;
+      marks.push({ letter, at: support.at, kind: 'vertical', text, sense: sense(vertical), ...note });
+    }
+    if (support.rotation.kind !== 'free') {
+      const text = `M_{${letter}} ${figure(format, 'moment', turnArrow(moment).size)}`;
+      marks.push({ letter, at: support.at, kind: 'moment', text, sense: sense(moment / beam.length) });
+    }
+    return marks;
+  });
+}

@@ -1,1 +1,3 @@
+export { type BeamState, type PreparedBeam, prepareBeam, solveBeam } from './solve';
+export { stationPositions, stationsAt } from './stations';
 export type * from './types';

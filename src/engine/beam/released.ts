@@ -1,0 +1,102 @@
+import { Sum, Wide } from '../linear/index';
+import {
+  type Beam,
+  findMotion,
+  frameOf,
+  type MovingPart,
+  type Redundant,
+  type Restraint,
+  riseOf,
+} from '../model/index';
+import type { Actions } from './actions';
+import type { Mesh } from './mesh';
+
+/** A reaction of the released beam, and how the beam would move if that alone gave way by 1 in its direction. */
+export type Reaction = {
+  support: number;
+  component: 'vertical' | 'rotation';
+  at: number;
+  restraint: Restraint;
+  motion: readonly MovingPart[];
+};
+
+/**
+ * The reactions of a statically determinate beam: `beam` without the redundants. Each comes from virtual work, exactly
+ * and without solving equations: were its restraint to give way by 1, the beam would move as a chain of rigid parts, and
+ *
+ *   R · 1 + (work of the loads on that movement) = 0
+ *
+ * The same movements turn given movements of the supports into the rigid movement of the beam.
+ */
+export function reactionsWithout(beam: Beam, released: readonly Redundant[]): Reaction[] {
+  const isReleased = (support: number, component: string) =>
+    released.some((r) => r.component === component && r.support === support);
+  return beam.supports.flatMap((support, i) =>
+    (['vertical', 'rotation'] as const).flatMap((component): Reaction[] => {
+      const restraint = support[component];
+      if (restraint.kind === 'free' || isReleased(i, component)) return [];
+      const motion = unitMotion(beam, released, { support: i, component });
+      return [{ support: i, component, at: support.at, restraint, motion }];
+    }),
+  );
+}
+
+function unitMotion(
+  beam: Beam,
+  released: readonly Redundant[],
+  reaction: Extract<Redundant, { support: number }>,
+): MovingPart[] {
+  const parts = findMotion(frameOf(beam, [...released, reaction]));
+  if (!parts) throw new RangeError('the released beam is not statically determinate');
+  const { at } = beam.supports[reaction.support]!;
+  const moved = reaction.component === 'vertical' ? riseAt(parts, at) : turnAt(parts, at, 'left');
+  return parts.map((part) => ({ ...part, amount: part.amount.over(moved) }));
+}
+
+/** Vertical movement at x; the parts meet in the hinges, and what is beside them stays. */
+export function riseAt(parts: readonly MovingPart[], x: number): Wide {
+  const part = parts.find(({ from, to }) => from <= x && x <= to);
+  return part ? riseOf(part, x) : Wide.ZERO;
+}
+
+/** Rotation just left or just right of x; at the left end of the beam there is but one. */
+export function turnAt(parts: readonly MovingPart[], x: number, side: 'left' | 'right'): Wide {
+  const holds = ({ from, to }: MovingPart) =>
+    side === 'left' && x > 0 ? from < x && x <= to : from <= x && x < to;
+  const part = parts.find(holds);
+  return part ? turnOf(part) : Wide.ZERO;
+}
+
+/** Rotation of a part; one that slides does not turn. */
+export const turnOf = ({ about, amount }: MovingPart): Wide => (about === null ? Wide.ZERO : amount);
+
+/**
+ * Work of the actions on a rigid movement. A couple at a point where the beam is cut acts at the right of the cut, so
+ * that the moment there, if it is a redundant, is the one just left of the couple.
+ */
+export function workOf(mesh: Mesh, actions: Actions, parts: readonly MovingPart[]): Wide {
+  const work = new Sum();
+  const end = mesh.points.length - 1;
+  for (const part of parts) {
+    const [first, last] = [mesh.index.get(part.from)!, mesh.index.get(part.to)!];
+    const turn = turnOf(part);
+    for (let i = first; i <= last; i++) {
+      const rise = riseOf(part, mesh.points[i]!);
+      // Where two parts meet the force there moves with both, and works once.
+      if (i > first || i === 0) work.subtract(actions.force[i]!.times(rise));
+      if (i < last || i === end) work.add(actions.couple[i]!.times(turn));
+      if (i < last)
+        work.subtract(pieceWork(mesh.lengths[i]!, actions.start[i]!, actions.rate[i]!, rise, turn));
+    }
+  }
+  return work.total();
+}
+
+const THIRD = Wide.ONE.over(3);
+
+/** ∫ (start + rate·s)(rise + turn·s) ds over a piece of length h */
+function pieceWork(h: Wide, start: Wide, rate: Wide, rise: Wide, turn: Wide): Wide {
+  const mean = start.plus(rate.times(h).times(0.5)).times(rise);
+  const moment = start.times(0.5).plus(rate.times(h).times(THIRD)).times(h).times(turn);
+  return mean.plus(moment).times(h);
+}

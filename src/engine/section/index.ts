@@ -26,5 +26,19 @@ export {
   tube,
   widthOf,
 } from './dimensions';
+export {
+  type AmericanTimber,
+  type EuropeanTimber,
+  elasticStrength,
+  MATERIALS,
+  type Material,
+  MaterialListFault,
+  type MaterialSource,
+  materialFor,
+  readMaterials,
+  type Steel,
+  type StrengthBand,
+  yieldStrength,
+} from './material';
 export { type Corner, outlineCorners, outlinePath, type Rounding, roundCorners } from './outline';
 export { type SectionProperties, sectionProperties } from './properties';

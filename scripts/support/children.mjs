@@ -1,0 +1,52 @@
+import { spawn } from 'node:child_process';
+import { setTimeout as sleep } from 'node:timers/promises';
+import { ROOT } from './command.mjs';
+import { endProcess, identify } from './processes.mjs';
+
+const FIRST_WAIT = 500;
+const LONGEST_WAIT = 30_000;
+const STEADY_AFTER = 60_000;
+/** Seconds in which a child may finish what it has in hand. */
+const DRAIN = 25;
+
+export const PROGRAMS = {
+  web: ['scripts/web.mjs'],
+  worker: ['--import', 'tsx', 'scripts/worker.ts'],
+};
+
+/**
+ * Keeps one of our programs running: when it dies it is started again, after a longer wait each time it dies young.
+ * In a process group of its own, so that Ctrl-C reaches it through us; it ends by itself when our channel to it closes.
+ */
+export function keepRunning(name, env, onStart) {
+  let child;
+  let wait = FIRST_WAIT;
+  let stopping = false;
+
+  const start = () => {
+    const began = Date.now();
+    child = spawn(process.execPath, PROGRAMS[name], {
+      cwd: ROOT,
+      env: { ...process.env, ...env },
+      detached: true,
+      stdio: ['ignore', 'inherit', 'inherit', 'ipc'],
+    });
+    onStart(identify(child.pid));
+    child.on('exit', async (code, signal) => {
+      if (stopping) return;
+      if (Date.now() - began > STEADY_AFTER) wait = FIRST_WAIT;
+      console.log(`The ${name} process ended (${signal ?? code}). Starting it again in ${wait / 1000} s.`);
+      await sleep(wait);
+      wait = Math.min(wait * 2, LONGEST_WAIT);
+      if (!stopping) start();
+    });
+  };
+
+  start();
+  return {
+    stop: async () => {
+      stopping = true;
+      if (child.exitCode === null && child.signalCode === null) await endProcess(child.pid, DRAIN);
+    },
+  };
+}

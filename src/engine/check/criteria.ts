@@ -25,7 +25,7 @@ const strength = z.strictObject({
   combinations: z.array(combination).min(1),
   /** Greatest bending stress as a share of the material's bending strength (yield for steel). */
   bending: z.number().positive(),
-  /** Greatest shear stress as a share of the material's shear strength (yield for steel, f_v for timber). */
+  /** Greatest shear stress as a share of the material's shear strength (f_y/√3 of steel, f_v of timber). */
   shear: z.number().positive(),
   source,
 });
@@ -51,6 +51,8 @@ export const criteriaDocument = z.strictObject({
   name: z.string().min(1),
   summary: z.string().min(1),
   families: z.array(z.enum(['steel', 'timber'])).min(1),
+  /** What the loads' groups are called in combinations, where not by their own letters: D and L for G and Q. */
+  letters: z.partialRecord(z.enum(LOAD_GROUPS), z.string().min(1)).optional(),
   strength,
   deflection: z.array(deflectionLimit).min(1),
   not_checked: z.array(z.string().min(1)).min(1),

@@ -1,3 +1,4 @@
+export { actingCombinations, factoredLoads } from './combine';
 export {
   type Combination,
   type Criteria,

@@ -14,7 +14,7 @@ export type ElasticSection = {
   readonly shearAreaAtAxis: number;
   /** Yield strength of steel, f_m,k or F_b of timber. */
   readonly bendingStrength: number;
-  /** Yield strength of steel, f_v,k or F_v of timber. */
+  /** Yield strength of steel in shear, f_y/√3; f_v,k or F_v of timber. */
   readonly shearStrength: number;
 };
 

@@ -1,0 +1,206 @@
+import { prepareBeam, type Solution } from '@/engine/beam';
+import {
+  type Arrangement,
+  actingCombinations,
+  type Criteria,
+  checkMember,
+  factoredLoads,
+  LOAD_GROUPS,
+  type MemberChecks,
+  type ServiceArrangement,
+} from '@/engine/check';
+import {
+  type Beam,
+  checkRedundants,
+  type Load,
+  type Redundant,
+  type Restraint,
+  readBeam,
+} from '@/engine/model';
+import { isProven, proveSolution } from '@/engine/proof';
+import type { UnitSystemName } from '@/engine/quantity';
+import type { Material } from '@/engine/section';
+import {
+  type Instance,
+  instantiate,
+  judgeRules,
+  type ParameterFault,
+  type RuleOutcome,
+  readParameters,
+  type Template,
+} from '@/engine/template';
+import { type ResolvedSection, resolveSection, type SectionValues } from '@/features/section/resolve';
+
+/** Everything that a member's numbers follow from: what was typed, and the documents that it pins. */
+export type MemberInputs = {
+  readonly template: Template;
+  /** By symbol, as typed; a load may be given by its groups: { "w": { "G": "5.52 kN/m", "S": "3.6 kN/m" } }. */
+  readonly parameters: Readonly<Record<string, unknown>>;
+  readonly system: UnitSystemName;
+  readonly section: { readonly values: SectionValues; readonly material: Material } | null;
+  readonly criteria: Criteria | null;
+  /** The section's own weight acts unless it is switched off, with a reason that is printed. */
+  readonly ownWeight: boolean;
+  /** Instead of the template's own choice. */
+  readonly redundants?: readonly Redundant[] | undefined;
+};
+
+export type ProofLine = {
+  readonly equilibrium: number;
+  readonly compatibility: number;
+  readonly agreement: number;
+  /** How many solved arrangements the worst is of. */
+  readonly arrangements: number;
+  readonly proven: boolean;
+};
+
+export type MemberEvaluation = {
+  readonly instance: Instance;
+  readonly section: ResolvedSection | null;
+  readonly beam: Beam;
+  /** All groups together, unfactored. */
+  readonly total: Solution;
+  /** Each group alone, unfactored; supports' own movements as a group of their own where there are any. */
+  readonly groups: readonly { readonly group: string; readonly solution: Solution }[];
+  readonly strength: readonly Arrangement[];
+  readonly service: readonly ServiceArrangement[];
+  /** Null until both a section and criteria are chosen. */
+  readonly checks: MemberChecks | null;
+  readonly rules: readonly RuleOutcome[];
+  readonly proof: ProofLine;
+};
+
+export type MemberReading =
+  | { readonly ok: true; readonly evaluation: MemberEvaluation }
+  | { readonly ok: false; readonly faults: readonly ParameterFault[] };
+
+/** The group of what the supports do by themselves. */
+export const MOVEMENTS = 'movements';
+
+const refused = (path: readonly (string | number)[], code: string, message: string): MemberReading => ({
+  ok: false,
+  faults: [{ path, code, message }],
+});
+
+/**
+ * Solves and checks a member: each load group alone, all of them together, and every combination of the criteria as an
+ * arrangement of its own, each proven by the second method. Pure: the browser shows while a value is dragged what the
+ * server stores on saving. Refused with a fault at each parameter that is wrong, at "section" or at "redundants".
+ */
+export function evaluateMember(inputs: MemberInputs): MemberReading {
+  const { template, system, criteria } = inputs;
+  const values = readParameters(template, inputs.parameters);
+  if (!values.ok) return values;
+  const resolution = inputs.section && resolveSection(inputs.section.values, inputs.section.material);
+  if (resolution && !resolution.ok) return refused(['section'], 'no_strength', resolution.message);
+  const section = resolution?.section ?? null;
+  const made = instantiate(template, values.values, {
+    ei: section?.ei,
+    depth: section?.depth,
+    selfWeight: inputs.ownWeight ? section?.selfWeight : undefined,
+    redundants: inputs.redundants,
+  });
+  if (!made.ok) return made;
+  const { instance } = made;
+  const reading = readBeam({ ...instance.beam, horizontal: 'ignore' });
+  if (!reading.ok) return { ok: false, faults: reading.faults.map((fault) => ({ ...fault, path: [] })) };
+  const beam = reading.value;
+  const choice = instance.beam.redundants;
+  const inadmissible = choice && checkRedundants(beam, choice)[0];
+  if (inadmissible) return refused(['redundants'], inadmissible.code, inadmissible.message);
+  return { ok: true, evaluation: evaluateBeam(instance, beam, section, criteria, template, system) };
+}
+
+function evaluateBeam(
+  instance: Instance,
+  beam: Beam,
+  section: ResolvedSection | null,
+  criteria: Criteria | null,
+  template: Template,
+  system: UnitSystemName,
+): MemberEvaluation {
+  const prepared = prepareBeam(beam, instance.beam.redundants);
+  const proofs: { beam: Beam; solution: Solution }[] = [];
+  const solve = (loads: readonly Load[], movements: boolean): Solution => {
+    const solution = prepared.solve(loads, { movements });
+    proofs.push({ beam: { ...(movements ? beam : still(beam)), loads }, solution });
+    return solution;
+  };
+  const total = solve(beam.loads, true);
+  const present = groupsOf(beam);
+  const groups = [
+    ...present.map((group) => ({
+      group,
+      solution: solve(
+        beam.loads.filter((load) => load.group === group),
+        false,
+      ),
+    })),
+    ...(moves(beam) ? [{ group: MOVEMENTS, solution: solve([], true) }] : []),
+  ];
+  const arrangementsOf = (combinations: Criteria['strength']['combinations']): Arrangement[] =>
+    actingCombinations(combinations, present, criteria?.letters).map((combination) => ({
+      combination,
+      solution: solve(factoredLoads(beam.loads, combination), true),
+    }));
+  const strength = arrangementsOf(criteria?.strength.combinations ?? []);
+  const service = (criteria?.deflection ?? []).flatMap((limit): ServiceArrangement[] =>
+    arrangementsOf([limit.combination]).map(({ combination, solution }) => ({
+      limit: { ...limit, combination },
+      solution,
+    })),
+  );
+  return {
+    instance,
+    section,
+    beam,
+    total,
+    groups,
+    strength,
+    service,
+    checks:
+      section && criteria
+        ? checkMember({ beam, section: section.elastic, criteria, strength, service, system })
+        : null,
+    rules: judgeRules(template, instance.scope, { depth: section?.depth, ga: null, solution: total }, system),
+    proof: worstOf(proofs),
+  };
+}
+
+/** Known groups first, in their usual order, then the practice's own by name. */
+function groupsOf({ loads }: Beam): string[] {
+  const known: readonly string[] = LOAD_GROUPS;
+  const rank = (group: string) => (known.includes(group) ? known.indexOf(group) : known.length);
+  const present = new Set(loads.flatMap(({ group }) => (group === undefined ? [] : [group])));
+  return [...present].sort((a, b) => rank(a) - rank(b) || a.localeCompare(b));
+}
+
+const movementOf = (restraint: Restraint): number => (restraint.kind === 'free' ? 0 : restraint.movement);
+const moves = ({ supports }: Beam): boolean =>
+  supports.some(({ vertical, rotation }) => movementOf(vertical) !== 0 || movementOf(rotation) !== 0);
+
+/** The same beam on supports that stay where they are. */
+const still = (beam: Beam): Beam => ({
+  ...beam,
+  supports: beam.supports.map((support) => ({
+    ...support,
+    vertical: unmoved(support.vertical),
+    rotation: unmoved(support.rotation),
+  })),
+});
+
+const unmoved = (restraint: Restraint): Restraint =>
+  restraint.kind === 'free' ? restraint : { ...restraint, movement: 0 };
+
+function worstOf(proofs: readonly { beam: Beam; solution: Solution }[]): ProofLine {
+  const each = proofs.map(({ beam, solution }) => ({ beam, proof: proveSolution(beam, solution) }));
+  const worst = (kind: 'equilibrium' | 'compatibility' | 'agreement') =>
+    Math.max(...each.map(({ proof }) => proof[kind]));
+  return {
+    equilibrium: worst('equilibrium'),
+    compatibility: worst('compatibility'),
+    agreement: worst('agreement'),
+    arrangements: each.length,
+    proven: each.every(({ beam, proof }) => isProven(proof, beam)),
+  };
+}

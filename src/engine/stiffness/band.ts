@@ -87,7 +87,8 @@ export class SymmetricBand {
       for (let j = first; j <= i; j++) {
         let value = this.get(i, j); // L[i][j] D[j] until divided below
         for (let k = Math.max(first, j - HALF_BANDWIDTH); k < j; k++) {
-          value = value.minus(factors.get(i, k).times(factors.get(j, k)).times(factors.get(k, k)));
+          const [a, b] = [factors.get(i, k), factors.get(j, k)];
+          if (a.hi !== 0 && b.hi !== 0) value = value.minus(a.times(b).times(factors.get(k, k)));
         }
         factors.set(i, j, j < i ? value.over(factors.get(j, j)) : value);
       }

@@ -1,2 +1,3 @@
 export { SingularStiffness } from './band';
+export { pointsOf } from './element';
 export { type State, type StiffnessPiece, type StiffnessSolution, solveStiffness } from './solve';

@@ -37,17 +37,20 @@ export function solveStiffness(beam: Beam): StiffnessSolution {
   const matrix = new SymmetricBand(size);
   const right = Array.from({ length: size }, () => Wide.ZERO);
 
-  const ends = elements.map((_, k) => endsOf(unknowns, k));
-  elements.forEach((element, k) => {
-    const stiffness = elementStiffness(element);
-    const fixed = fixedEndForces(element);
-    ends[k]!.forEach((i, a) => {
+  const parts = elements.map((element, k) => ({
+    element,
+    ends: endsOf(unknowns, k),
+    stiffness: elementStiffness(element),
+    fixed: fixedEndForces(element),
+  }));
+  for (const { ends, stiffness, fixed } of parts) {
+    ends.forEach((i, a) => {
       right[i] = right[i]!.minus(fixed[a]!);
-      ends[k]!.forEach((j, b) => {
+      ends.forEach((j, b) => {
         if (j <= i) matrix.add(i, j, stiffness[a]![b]!);
       });
     });
-  });
+  }
 
   const at = new Map(points.map((x, k) => [x, unknowns[k]!]));
   for (const load of beam.loads) {
@@ -60,12 +63,7 @@ export function solveStiffness(beam: Beam): StiffnessSolution {
   }
 
   const movements = matrix.solve(right);
-  const pieces = elements.map((element, k) =>
-    pieceStates(
-      element,
-      ends[k]!.map((i) => movements[i]!),
-    ),
-  );
+  const pieces = parts.map((part) => pieceStates(part, movements));
   return { pieces: pieces.map(({ rounded }) => rounded), reactions: reactionsOf(beam, points, pieces) };
 }
 
@@ -96,12 +94,14 @@ function restrain(matrix: SymmetricBand, right: Wide[], i: number, restraint: Re
   }
 }
 
+type Part = { element: Element; ends: number[]; stiffness: Wide[][]; fixed: Wide[] };
+
 type PieceStates = { left: SectionState; right: SectionState; rounded: StiffnessPiece };
 
-function pieceStates(element: Element, moved: readonly Wide[]): PieceStates {
-  const stiffness = elementStiffness(element);
-  const forces = fixedEndForces(element).map((fixed, a) =>
-    moved.reduce((total, u, b) => total.plus(stiffness[a]![b]!.times(u)), fixed),
+function pieceStates({ element, ends, stiffness, fixed }: Part, movements: readonly Wide[]): PieceStates {
+  const moved = ends.map((i) => movements[i]!);
+  const forces = fixed.map((held, a) =>
+    moved.reduce((total, u, b) => total.plus(stiffness[a]![b]!.times(u)), held),
   );
   const [v1, r1, v2, r2] = moved as [Wide, Wide, Wide, Wide];
   const [f1, m1, f2, m2] = forces as [Wide, Wide, Wide, Wide];

@@ -1,0 +1,172 @@
+import { common, ONE, product, type Rational, raised, rational, sum } from './rational';
+
+/**
+ * Formulas as exact algebra: sums of terms like  3/8 · w · L⁴ · (3L − a)² · EI⁻¹.  One object gives a formula's value,
+ * its TeX with symbols and its TeX with numbers, so that the three cannot differ; and a chart's formula becomes the
+ * beam's by substitution, with what cancels cancelled and every other factor kept as the chart prints it.
+ */
+export type Powers = ReadonlyMap<string, number>;
+export type Monomial = { readonly coefficient: Rational; readonly powers: Powers };
+/** A sum raised to a whole power: at least two monomials without a common factor, the first one positive. */
+export type Factor = { readonly sum: readonly Monomial[]; readonly power: number };
+export type Term = Monomial & { readonly factors: readonly Factor[] };
+/** The sum of its terms; none is zero, no two are alike. */
+export type Expression = readonly Term[];
+
+export const ZERO: Expression = [];
+
+export const constant = (value: Rational | number): Expression => {
+  const coefficient = typeof value === 'number' ? rational(value) : value;
+  return coefficient.n === 0 ? ZERO : [{ coefficient, powers: new Map(), factors: [] }];
+};
+
+export const symbol = (name: string): Expression => [
+  { coefficient: ONE, powers: new Map([[name, 1]]), factors: [] },
+];
+
+/** The sum, like terms collected, in the order in which they first appear. */
+export function add(...summands: readonly Expression[]): Expression {
+  const found = new Map<string, Term>();
+  for (const term of summands.flat()) {
+    const key = keyOf(term);
+    const alike = found.get(key);
+    found.set(key, alike ? { ...alike, coefficient: sum(alike.coefficient, term.coefficient) } : term);
+  }
+  return [...found.values()].filter(({ coefficient }) => coefficient.n !== 0);
+}
+
+export const negate = (a: Expression): Expression =>
+  a.map((term) => ({ ...term, coefficient: product(term.coefficient, rational(-1)) }));
+
+export const subtract = (a: Expression, b: Expression): Expression => add(a, negate(b));
+
+/** The product. A plain sum stays one factor, (3L − a); a sum of terms with factors of their own is multiplied out. */
+export function multiply(a: Expression, b: Expression): Expression {
+  const [left, right] = [asTerm(a), asTerm(b)];
+  if (left && right) return [multiplyTerms(left, right)];
+  return add(...a.map((x) => b.map((y) => multiplyTerms(x, y))));
+}
+
+/** a / b, term by term of a. Fails with RangeError where b is zero or a sum that is no single factor. */
+export function divide(a: Expression, b: Expression): Expression {
+  const inverse = power(b, -1);
+  return add(...a.map((term) => multiply([term], inverse)));
+}
+
+/** aᵏ for a whole k. */
+export function power(a: Expression, k: number): Expression {
+  if (k === 0) return constant(1);
+  const term = asTerm(a);
+  if (term) {
+    return [
+      {
+        coefficient: raised(term.coefficient, k),
+        powers: new Map([...term.powers].map(([name, p]) => [name, p * k])),
+        factors: term.factors.map((factor) => ({ ...factor, power: factor.power * k })),
+      },
+    ];
+  }
+  if (k < 0) throw new RangeError(a.length === 0 ? 'division by zero' : 'division by a sum of fractions');
+  return multiply(a, power(a, k - 1));
+}
+
+/** Every named symbol replaced. Sums that a substitution reaches are collected anew: 6L² − 4Lx + x² is 3L² at x = L. */
+export function substitute(a: Expression, replacements: Readonly<Record<string, Expression>>): Expression {
+  const replaced = (name: string) => replacements[name] ?? symbol(name);
+  const monomial = ({ coefficient, powers }: Monomial, join: (x: Expression, y: Expression) => Expression) =>
+    [...powers].reduce((total, [name, p]) => join(total, power(replaced(name), p)), constant(coefficient));
+  const factor = ({ sum: monomials, power: p }: Factor) =>
+    power(add(...monomials.map((m) => expand(monomial(m, multiply)))), p);
+  return add(
+    ...a.map((term) =>
+      term.factors.reduce((total, f) => multiply(total, factor(f)), monomial(term, multiply)),
+    ),
+  );
+}
+
+/** Multiplied out into monomials. Fails with RangeError where a sum stands in a denominator. */
+export function expand(a: Expression): Expression {
+  return add(
+    ...a.map(({ factors, ...monomial }) => {
+      let total: Expression = [{ ...monomial, factors: [] }];
+      for (const { sum: monomials, power: p } of factors) {
+        if (p < 0) throw new RangeError('a sum in a denominator cannot be multiplied out');
+        for (let k = 0; k < p; k++) {
+          total = add(...total.map((x) => monomials.map((y) => multiplyTerms(x, { ...y, factors: [] }))));
+        }
+      }
+      return total;
+    }),
+  );
+}
+
+/** The value, with the symbols' values. */
+export function evaluate(a: Expression, value: (name: string) => number): number {
+  const monomial = ({ coefficient, powers }: Monomial) =>
+    [...powers].reduce((total, [name, p]) => total * value(name) ** p, coefficient.n / coefficient.d);
+  return a.reduce((total, term) => {
+    const factors = term.factors.map((f) => f.sum.reduce((s, m) => s + monomial(m), 0) ** f.power);
+    return total + factors.reduce((p, factor) => p * factor, monomial(term));
+  }, 0);
+}
+
+/** Every symbol in it. */
+export function symbolsOf(a: Expression): string[] {
+  const names = a.flatMap((term) => [
+    ...term.powers.keys(),
+    ...term.factors.flatMap((f) => f.sum.flatMap((m) => [...m.powers.keys()])),
+  ]);
+  return [...new Set(names)];
+}
+
+/** The whole as one term, if it is one or a plain sum: the sum's common factor times what is left. */
+function asTerm(a: Expression): Term | null {
+  if (a.length === 1) return a[0]!;
+  if (a.length === 0 || a.some(({ factors }) => factors.length > 0)) return null;
+  const shared = a.reduce((divisor, { coefficient }) => common(divisor, coefficient), a[0]!.coefficient);
+  const names = new Set(a.flatMap(({ powers }) => [...powers.keys()]));
+  const lowest = new Map(
+    [...names].map((name) => [name, Math.min(...a.map(({ powers }) => powers.get(name) ?? 0))] as const),
+  );
+  const lead = a.findIndex(({ coefficient }) => coefficient.n > 0);
+  const content = lead < 0 ? rational(-shared.n, shared.d) : shared;
+  const inverse = { coefficient: raised(content, -1), powers: negated(lowest), factors: [] };
+  const rest = a.map((term) => multiplyTerms(term, inverse));
+  const ordered = lead > 0 ? [rest[lead]!, ...rest.filter((_, k) => k !== lead)] : rest;
+  return { coefficient: content, powers: nonZero(lowest), factors: [{ sum: ordered, power: 1 }] };
+}
+
+function multiplyTerms(a: Term, b: Term): Term {
+  const powers = new Map(a.powers);
+  for (const [name, p] of b.powers) powers.set(name, (powers.get(name) ?? 0) + p);
+  const factors = [...a.factors];
+  for (const factor of b.factors) {
+    const at = factors.findIndex((other) => sumKey(other.sum) === sumKey(factor.sum));
+    if (at < 0) factors.push(factor);
+    else factors[at] = { sum: factor.sum, power: factors[at]!.power + factor.power };
+  }
+  return {
+    coefficient: product(a.coefficient, b.coefficient),
+    powers: nonZero(powers),
+    factors: factors.filter((factor) => factor.power !== 0),
+  };
+}
+
+const nonZero = (powers: Powers): Powers => new Map([...powers].filter(([, p]) => p !== 0));
+
+const negated = (powers: Powers): Powers => new Map([...powers].map(([name, p]) => [name, -p]));
+
+const powersKey = (powers: Powers) =>
+  [...powers]
+    .map(([name, p]) => `${name}^${p}`)
+    .sort()
+    .join('*');
+
+const sumKey = (monomials: readonly Monomial[]) =>
+  monomials
+    .map(({ coefficient, powers }) => `${coefficient.n}/${coefficient.d}*${powersKey(powers)}`)
+    .sort()
+    .join('+');
+
+const keyOf = (term: Term) =>
+  [powersKey(term.powers), ...term.factors.map((f) => `(${sumKey(f.sum)})^${f.power}`).sort()].join('*');

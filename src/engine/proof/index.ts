@@ -1,0 +1,1 @@
+export { isProven, proofLimit, proveSolution } from './proof';

@@ -48,9 +48,13 @@ export function TitleBlock(props: TitleBlockProps) {
         <Label>{kind}</Label>
         <p className="text-title break-words">{title}</p>
       </div>
-      <Compartment span="col-span-2" label="By" value={props.by} signed />
-      <Compartment span="col-span-2" label="Checked" value={props.checked} signed />
-      <Compartment span="col-span-2" label="Date" value={props.date} />
+      {(identity || props.by !== undefined || props.date !== undefined) && (
+        <>
+          <Compartment span="col-span-2" label="By" value={props.by} signed />
+          <Compartment span="col-span-2" label="Checked" value={props.checked} signed />
+          <Compartment span="col-span-2" label="Date" value={props.date} />
+        </>
+      )}
       {identity && (
         <>
           <div className="col-span-3">

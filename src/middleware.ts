@@ -18,7 +18,11 @@ const PROBES: readonly string[] = [paths.healthz, paths.readyz];
 
 export const onRequest: MiddlewareHandler = async (context, next) => {
   const { locals, cookies, url } = context;
-  Object.assign(locals, { origin, theme: readTheme(cookies), user: null });
+  locals.origin = origin;
+  locals.theme = readTheme(cookies);
+  // Kept when the page that says why is rendered in place of the one that was refused.
+  locals.user ??= null;
+  locals.refusal ??= null;
   const answer = url.pathname.startsWith('/api/') ? answerApi : answerPage;
   return secure(await answer(context, next), https);
 };
@@ -59,7 +63,7 @@ async function notThatMethod({ routePattern, request }: APIContext): Promise<App
 
 async function answerPage(context: APIContext, next: Next): Promise<Response> {
   const { url, locals } = context;
-  if (PROBES.includes(url.pathname)) return next();
+  if (PROBES.includes(url.pathname) || locals.refusal) return next();
   try {
     await admit(context);
     if (!locals.user && url.pathname !== paths.signIn) {
@@ -72,13 +76,10 @@ async function answerPage(context: APIContext, next: Next): Promise<Response> {
   }
 }
 
-/** What a page threw: a missing thing as the 404 page, the rest in words; our own faults go on to the 500 page. */
-function refusePage({ request, routePattern }: APIContext, error: unknown): Response {
-  const refusal = toAppError(error, `${request.method} ${routePattern}`);
-  if (refusal.code === 'internal') throw error;
-  if (refusal.code === 'not_found') return new Response(null, { status: 404 });
-  return new Response(`${refusal.message}\n`, {
-    status: refusal.status,
-    headers: { ...refusal.headers, 'Content-Type': 'text/plain; charset=utf-8' },
-  });
+/** What a page threw, said by a page: nobody meets an empty answer or a trace. */
+function refusePage(context: APIContext, error: unknown): Promise<Response> {
+  const { request, routePattern, locals, url } = context;
+  locals.refusal = toAppError(error, `${request.method} ${routePattern}`);
+  // A request of its own: the body of the refused one may have been read.
+  return context.rewrite(new Request(new URL(paths.refused, url), { headers: request.headers }));
 }

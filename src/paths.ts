@@ -3,6 +3,7 @@ export const paths = {
   home: '/',
   signIn: '/sign-in',
   signOut: '/sign-out',
+  refused: '/refused',
   account: '/account',
   templates: '/templates',
   sections: '/sections',

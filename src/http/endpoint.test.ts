@@ -37,7 +37,7 @@ async function ask(route: Endpoint, { as = user, body, headers, query = '' }: As
     request,
     params: {},
     defaultLocale: 'en',
-    locals: { user: as, theme: null, origin: 'http://localhost' },
+    locals: { user: as, theme: null, refusal: null, origin: 'http://localhost' },
   });
   const response = await route(context);
   const text = await response.text();

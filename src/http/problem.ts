@@ -20,6 +20,8 @@ const TITLES: Readonly<Record<ErrorCode, string>> = {
   unavailable: 'Not available now',
 };
 
+export const titleOf = (code: ErrorCode): string => TITLES[code];
+
 /** Of the driver and of PostgreSQL: the database is away, which is nobody's mistake and passes. */
 const DATABASE_AWAY = new Set([
   'ECONNREFUSED',

@@ -11,13 +11,3 @@ export function readTheme(cookies: AstroCookies): Theme | null {
   const value = cookies.get(THEME_COOKIE)?.value;
   return THEMES.find((theme) => theme === value) ?? null;
 }
-
-/** For a page without script; with it the page sets the cookie itself. */
-export function setTheme(cookies: AstroCookies, origin: string, theme: Theme): void {
-  cookies.set(THEME_COOKIE, theme, {
-    path: '/',
-    maxAge: 31_536_000,
-    sameSite: 'lax',
-    secure: origin.startsWith('https:'),
-  });
-}

@@ -41,4 +41,13 @@ export {
   yieldStrength,
 } from './material';
 export { type Corner, outlineCorners, outlinePath, type Rounding, roundCorners } from './outline';
+export {
+  type Finding,
+  type PlausibilityOptions,
+  plausibilityFindings,
+  type Severity,
+  TABULATED,
+  type Tabulated,
+  type TabulatedName,
+} from './plausibility';
 export { type SectionProperties, sectionProperties } from './properties';

@@ -1,0 +1,100 @@
+import fc from 'fast-check';
+import { describe, expect, test } from 'vitest';
+import { type IDimensions, plausibilityFindings, sectionProperties, type Tabulated, tube } from './index';
+
+const OV260: IDimensions = { shape: 'i', h: 0.258, b: 0.13, tw: 0.0062, tf: 0.0098, r: 0.01 };
+const OPTIONS = { density: 7850, rootRadiusKnown: true };
+
+/** A row as its maker computed it. */
+function row(change: Partial<Record<keyof Tabulated, number>> = {}): Tabulated {
+  const { area, iMajor, iMinor, wElMajor, wElMinor, wPlMajor, wPlMinor, rMajor, rMinor, j, iw } =
+    sectionProperties(OV260);
+  const right = { area, iMajor, iMinor, wElMajor, wElMinor, wPlMajor, wPlMinor, rMajor, rMinor, j, iw };
+  return { mass: 7850 * area, ...right, ...change };
+}
+const right = (name: keyof Tabulated): number => row()[name] ?? Number.NaN;
+const findings = (change: Partial<Record<keyof Tabulated, number>>) =>
+  plausibilityFindings(OV260, row(change), OPTIONS);
+
+test('a row that agrees with its dimensions is silent', () => {
+  expect(findings({})).toEqual([]);
+});
+
+test('any tube and any I that agree with themselves are silent', () => {
+  const size = fc.double({ min: 0.05, max: 0.4, noNaN: true });
+  fc.assert(
+    fc.property(size, fc.double({ min: 0.4, max: 1, noNaN: true }), (h, ratio) => {
+      const d = tube(h, h * ratio, h / 20, 'EN 10210');
+      const { area, iMajor, iMinor, wElMajor, wPlMajor, j } = sectionProperties(d);
+      const tabulated = { mass: 7850 * area, area, iMajor, iMinor, wElMajor, wPlMajor, j };
+      expect(plausibilityFindings(d, tabulated, OPTIONS)).toEqual([]);
+    }),
+  );
+});
+
+describe('one slip is reported once, with its cause', () => {
+  test.each<[string, Partial<Record<keyof Tabulated, number>>, string, string, RegExp]>([
+    ['I in mm⁴', { iMajor: right('iMajor') * 1e4 }, 'second_moment', 'iMajor', /mm⁴ under a heading of cm⁴/],
+    [
+      'I in in⁴',
+      { iMajor: right('iMajor') / 2.54 ** 4 },
+      'second_moment',
+      'iMajor',
+      /in⁴ under a heading of cm⁴/,
+    ],
+    [
+      'moduli exchanged',
+      { wElMajor: right('wPlMajor'), wPlMajor: right('wElMajor') },
+      'plastic_below_elastic',
+      'wPlMajor',
+      /exchanged/,
+    ],
+    ['axes exchanged', { iMajor: right('iMinor'), iMinor: right('iMajor') }, 'axes', 'iMajor', /exchanged/],
+    ['mass in lb/ft', { mass: right('mass') / 1.48816 }, 'mass', 'mass', /lb\/ft/],
+    ['I_w in dm⁶', { iw: right('iw') / 1e6 }, 'warping', 'iw', /dm⁶/],
+    ['area a tenth', { area: right('area') / 10 }, 'area', 'area', /10\^1 times too small/],
+  ])('%s', (_name, change, rule, property, cause) => {
+    const found = findings(change);
+    expect(found.map((finding) => [finding.rule, finding.severity, finding.property])).toEqual([
+      [rule, 'error', property],
+    ]);
+    expect(found[0]?.cause).toMatch(cause);
+  });
+});
+
+describe('tolerances', () => {
+  test.each([
+    ['mass', 1.014, []],
+    ['mass', 1.016, ['warning']],
+    ['mass', 1.06, ['error']],
+    ['area', 1.009, []],
+    ['area', 1.02, ['warning']],
+    ['area', 1.09, ['error']],
+    ['iMajor', 1.014, []],
+    ['iMajor', 1.06, ['error']],
+    ['iMinor', 1.03, ['warning']],
+    ['wElMajor', 0.985, ['warning']],
+    ['wElMajor', 0.96, ['error']],
+    ['rMajor', 1.02, ['warning']],
+  ] as const)('%s at %d of its value', (property, factor, severities) => {
+    const found = findings({ [property]: right(property) * factor }).filter(
+      (one) => one.property === property,
+    );
+    expect(found.map(({ severity }) => severity)).toEqual(severities);
+  });
+
+  test('a printed value may be off by half a unit of its last digit', () => {
+    const tabulated = row({ mass: right('mass') * 1.02 });
+    const rounding = { mass: 0.5 };
+    expect(plausibilityFindings(OV260, tabulated, { ...OPTIONS, rounding })).toEqual([]);
+  });
+
+  test('without root radii a table may say up to 7 % more, never less', () => {
+    const bare = { ...OV260, r: 0 };
+    const area = sectionProperties(bare).area;
+    const found = (factor: number) =>
+      plausibilityFindings(bare, { area: area * factor }, { density: 7850, rootRadiusKnown: false });
+    expect(found(1.06)).toEqual([]);
+    expect(found(0.98).map(({ severity }) => severity)).toEqual(['warning']);
+  });
+});

@@ -1,3 +1,5 @@
-export { type BeamState, type PreparedBeam, prepareBeam, solveBeam } from './solve';
+export { type ForceMethodParts, forceMethod, releasedBeam } from './force-method';
+export { loadsOfGroup, type PreparedBeam, prepareBeam, solveBeam } from './solve';
 export { stationPositions, stationsAt } from './stations';
+export type { BeamState } from './superpose';
 export type * from './types';

@@ -29,16 +29,19 @@ export type Reaction = {
  * The same movements turn given movements of the supports into the rigid movement of the beam.
  */
 export function reactionsWithout(beam: Beam, released: readonly Redundant[]): Reaction[] {
-  const isReleased = (support: number, component: string) =>
-    released.some((r) => r.component === component && r.support === support);
   return beam.supports.flatMap((support, i) =>
     (['vertical', 'rotation'] as const).flatMap((component): Reaction[] => {
       const restraint = support[component];
-      if (restraint.kind === 'free' || isReleased(i, component)) return [];
+      if (restraint.kind === 'free' || isReleased(released, i, component)) return [];
       const motion = unitMotion(beam, released, { support: i, component });
       return [{ support: i, component, at: support.at, restraint, motion }];
     }),
   );
+}
+
+/** Whether a component of a support is among the redundants. */
+export function isReleased(released: readonly Redundant[], support: number, component: string): boolean {
+  return released.some((r) => r.component !== 'moment' && r.component === component && r.support === support);
 }
 
 function unitMotion(

@@ -1,4 +1,4 @@
-import { CANCELLED, Wide } from '../linear/index';
+import { CANCELLED, largest, settled, Wide } from '../linear/index';
 import { riseOf } from '../model/index';
 import type { Actions } from './actions';
 import type { Mesh } from './mesh';
@@ -38,11 +38,10 @@ function loadIntegrals(
   return [integral(1), integral(2), integral(3), integral(4)];
 }
 
-/** Shear and moment by equilibrium from the left end: V' = −w, M' = V. What cancels to rounding is exactly zero. */
+/** Shear and moment by equilibrium from the left end: V' = −w, M' = V. */
 export function forcesOf(mesh: Mesh, actions: Actions, { up, turn }: Holding): Forces {
   const forces: Forces = { shear: [], moment: [] };
   let [shear, moment] = [Wide.ZERO, Wide.ZERO];
-  let [force, couple] = [0, 0]; // magnitudes of all that acts
   mesh.lengths.forEach((h, k) => {
     shear = shear.plus(up[k]!).minus(actions.force[k]!);
     moment = moment.minus(turn[k]!).minus(actions.couple[k]!);
@@ -51,14 +50,8 @@ export function forcesOf(mesh: Mesh, actions: Actions, { up, turn }: Holding): F
     const [once, twice] = loadIntegrals(mesh, actions, k);
     moment = moment.plus(shear.times(h)).minus(twice);
     shear = shear.minus(once);
-    force += Math.abs(up[k]!.hi) + Math.abs(actions.force[k]!.hi) + Math.abs(once.hi);
-    couple += Math.abs(turn[k]!.hi) + Math.abs(actions.couple[k]!.hi);
   });
-  const length = mesh.points.at(-1)!;
-  return {
-    shear: settled(forces.shear, force + couple / length),
-    moment: settled(forces.moment, force * length + couple),
-  };
+  return forces;
 }
 
 /** ψ' = M/EI + κ and v' = ψ − V/GA, integrated exactly from the left end. */
@@ -109,10 +102,8 @@ export function placedCurve(
   });
   const turned = largest([...curve.rotation, ...rotation]);
   const moved = largest([...curve.deflection, ...deflection]);
-  return { rotation: settled(rotation, turned), deflection: settled(deflection, moved) };
+  return {
+    rotation: settled(rotation, CANCELLED * turned),
+    deflection: settled(deflection, CANCELLED * moved),
+  };
 }
-
-const largest = (values: readonly Wide[]) => values.reduce((most, { hi }) => Math.max(most, Math.abs(hi)), 0);
-
-const settled = (values: Wide[], magnitude: number): Wide[] =>
-  values.map((value) => (Math.abs(value.hi) > CANCELLED * magnitude ? value : Wide.ZERO));

@@ -1,4 +1,4 @@
-import { CANCELLED, type Sum, Wide } from '../linear/index';
+import { CANCELLED, largest, type Sum, settled, Wide } from '../linear/index';
 import type { Redundant } from '../model/index';
 import type { Mesh } from './mesh';
 import { type Reaction, riseAt, turnAt } from './released';
@@ -85,15 +85,13 @@ function lines(members: readonly Member[], acting: ReadonlyMap<number, { up: Wid
     moments.push(moment);
     moment = moment.plus(shear.times(length));
   }
-  const cleared = { shear: cleaned(shears), moment: cleaned(moments) };
+  // What is left of a sum that cancels is exactly nothing: so a unit state ends where it ends.
+  const cleared = {
+    shear: settled(shears, CANCELLED * largest(shears)),
+    moment: settled(moments, CANCELLED * largest(moments)),
+  };
   const carries = members.map((_, m) => cleared.shear[m] !== Wide.ZERO || cleared.moment[m] !== Wide.ZERO);
   return { ...cleared, first: Math.max(0, carries.indexOf(true)), last: carries.lastIndexOf(true) };
-}
-
-/** What is left of a sum that cancels is exactly nothing: so a unit state ends where it ends. */
-function cleaned(values: readonly Wide[]): Wide[] {
-  const largest = values.reduce((most, { hi }) => Math.max(most, Math.abs(hi)), 0);
-  return values.map((value) => (Math.abs(value.hi) > CANCELLED * largest ? value : Wide.ZERO));
 }
 
 /**

@@ -1,3 +1,3 @@
 export { Cholesky, type LowerRow, SingularMatrix } from './cholesky';
-export { CANCELLED, Sum } from './sum';
+export { CANCELLED, largest, Sum, settled } from './sum';
 export { Wide } from './wide';

@@ -21,3 +21,11 @@ export class Sum {
     return Math.abs(this.value.hi) > CANCELLED * this.magnitude ? this.value : Wide.ZERO;
   }
 }
+
+/** Largest magnitude; 0 of none. */
+export const largest = (...lists: readonly (readonly Wide[])[]): number =>
+  lists.reduce((most, list) => list.reduce((m, { hi }) => Math.max(m, Math.abs(hi)), most), 0);
+
+/** The values, exactly zero where they are not above the floor. */
+export const settled = (values: readonly Wide[], floor: number): Wide[] =>
+  values.map((value) => (Math.abs(value.hi) > floor ? value : Wide.ZERO));

@@ -1,0 +1,71 @@
+import { Sum, settled, Wide } from '../linear/index';
+import type { Load } from '../model/index';
+import { actionsOf } from './actions';
+import type { Flexibility } from './flexibility';
+import { workOf } from './released';
+import { floorOf } from './scale';
+import { curveOf, forcesOf } from './state';
+import { holdingOf, type Superposed, yielding } from './superpose';
+import { addWorkOn } from './virtual-work';
+
+/** F·X + Δ₀ = Δ_imposed, solved. */
+export type Compatibility = Superposed & { gaps: Wide[]; imposed: Wide[] };
+
+/** Gaps of the released beam under the loads, and the redundants that close them. */
+export function solveCompatibility(
+  flexibility: Flexibility,
+  loads: readonly Load[],
+  moved: boolean,
+): Compatibility {
+  const { mesh, members, reactions, redundants, units } = flexibility;
+  const actions = actionsOf(mesh, loads);
+  const released = reactions.map(({ motion }) => workOf(mesh, actions, motion).negated());
+  const none = redundants.map(() => Wide.ZERO);
+  const curve = curveOf(mesh, actions, forcesOf(mesh, actions, holdingOf(flexibility, released, none)));
+  const movements = reactions.map(({ restraint }, c) => yielding(restraint, released[c]!, moved));
+  const imposed = imposedOf(flexibility, moved);
+  const gaps: Wide[] = [];
+  const missing = units.map((unit, i) => {
+    const sum = new Sum();
+    addWorkOn(sum, members, unit, curve);
+    movements.forEach((movement, c) => {
+      if (movement.hi !== 0) sum.subtract(unit.reactions[c]!.times(movement));
+    });
+    gaps.push(sum.total());
+    sum.subtract(imposed[i]!);
+    return sum.total().negated();
+  });
+  const values = closing(flexibility, missing, { actions, released });
+  return { actions, released, values, moved, gaps, imposed };
+}
+
+/** Prescribed movement of each redundant; there is none across an internal release. */
+function imposedOf({ beam, redundants }: Flexibility, moved: boolean): Wide[] {
+  return redundants.map((redundant) => {
+    const restraint =
+      redundant.component !== 'moment' && beam.supports[redundant.support]![redundant.component];
+    return moved && restraint && restraint.kind !== 'free' ? Wide.of(restraint.movement) : Wide.ZERO;
+  });
+}
+
+/** The redundants that make the missing movements, exactly zero where they come out as nothing but rounding. */
+function closing(
+  { mesh, factors, reactions, redundants }: Flexibility,
+  missing: readonly Wide[],
+  { actions, released }: Pick<Superposed, 'actions' | 'released'>,
+): Wide[] {
+  const values = factors.solve(missing);
+  const isForce = (component: string) => component === 'vertical';
+  const forces = [
+    ...released.filter((_, c) => isForce(reactions[c]!.component)),
+    ...values.filter((_, i) => isForce(redundants[i]!.component)),
+  ];
+  const couples = [
+    ...released.filter((_, c) => !isForce(reactions[c]!.component)),
+    ...values.filter((_, i) => !isForce(redundants[i]!.component)),
+  ];
+  const floor = floorOf(mesh, actions, forces, couples);
+  return values.map(
+    (value, i) => settled([value], isForce(redundants[i]!.component) ? floor.force : floor.couple)[0]!,
+  );
+}

@@ -1,0 +1,24 @@
+import { largest, type Wide } from '../linear/index';
+import type { Actions } from './actions';
+import type { Mesh } from './mesh';
+
+/** Part of the largest force below which a force is rounding's, whatever redundants it was computed through. */
+const NOTHING = 1e-18;
+
+/** Forces, N, and moments, N·m, that are nothing beside those that act on the beam or in it. */
+export type Floor = { force: number; couple: number };
+
+export function floorOf(
+  mesh: Mesh,
+  actions: Actions,
+  forces: readonly Wide[],
+  couples: readonly Wide[],
+): Floor {
+  const length = mesh.points.at(-1)!;
+  const force = largest(forces, actions.force);
+  const couple = largest(couples, actions.couple);
+  return {
+    force: NOTHING * Math.max(force, couple / length),
+    couple: NOTHING * Math.max(couple, force * length),
+  };
+}

@@ -6,14 +6,20 @@ import { openHome, readJson } from './support/home.mjs';
 import { isSame } from './support/processes.mjs';
 
 /** What can be run on the installation that `npm start` keeps: node scripts/run.mjs token EMAIL */
-const PROGRAMS = ['token', 'audit-verify'];
+const PROGRAMS = {
+  token: ['--import', 'tsx', 'scripts/token.ts'],
+  'audit-verify': ['--import', 'tsx', 'scripts/audit-verify.ts'],
+  dev: ['node_modules/astro/astro.js', 'dev', '--port', '4322'],
+};
+/** Of the development server, beside the one that is running. */
+const DEV_ORIGIN = 'http://localhost:4322';
 
 function main([name, ...args]) {
-  if (!PROGRAMS.includes(name)) throw new Stop(`Give one of: ${PROGRAMS.join(', ')}.`);
-  const child = spawn(process.execPath, ['--import', 'tsx', `scripts/${name}.ts`, ...args], {
+  if (!Object.hasOwn(PROGRAMS, name)) throw new Stop(`Give one of: ${Object.keys(PROGRAMS).join(', ')}.`);
+  const child = spawn(process.execPath, [...PROGRAMS[name], ...args], {
     cwd: ROOT,
     stdio: 'inherit',
-    env: { ...process.env, DATABASE_URL: databaseUrl() },
+    env: { ORIGIN: DEV_ORIGIN, DEMO: 'true', ...process.env, DATABASE_URL: databaseUrl() },
   });
   child.on('exit', (code) => {
     process.exitCode = code ?? 1;

@@ -2,7 +2,7 @@ import './support/node-version.mjs';
 import { rmSync, writeFileSync } from 'node:fs';
 import { setTimeout as sleep } from 'node:timers/promises';
 import { ensureBuild } from './support/build.mjs';
-import { keepRunning, PROGRAMS } from './support/children.mjs';
+import { PROGRAMS, startAll } from './support/children.mjs';
 import { startCluster, stopCluster } from './support/cluster.mjs';
 import { Stop, step } from './support/command.mjs';
 import { migrateDatabase, openDatabase, seedDatabase } from './support/database.mjs';
@@ -84,14 +84,12 @@ async function startChildren(home, record, database) {
     DEMO: demo,
     NODE_ENV: 'production',
   };
-  for (const name of Object.keys(PROGRAMS)) {
-    const child = keepRunning(name, env, (identity) => {
-      record.children[name] = identity;
-      writeJson(home.running, record);
-    });
-    ends.push(child.stop);
-  }
-  if (!(await waitUntil(() => stopping || isReady(port), 60)))
+  const children = startAll(env, port, (name, identity) => {
+    record.children[name] = identity;
+    writeJson(home.running, record);
+  });
+  ends.push(children.stop);
+  if (!(await children.ready) && !stopping)
     throw new Stop('Web and worker do not become ready. What they printed stands above.');
 }
 

@@ -4,14 +4,13 @@ import { existsSync, mkdtempSync, rmSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { ensureBuild } from './support/build.mjs';
-import { keepRunning, PROGRAMS } from './support/children.mjs';
+import { startAll } from './support/children.mjs';
 import { startCluster, stopCluster } from './support/cluster.mjs';
 import { ROOT, Stop, step } from './support/command.mjs';
 import { createDatabase, migrateDatabase, seedDatabase, urls } from './support/database.mjs';
 import { openHome, readJson } from './support/home.mjs';
 import { ensureDebianPackages, ensureNodePackages } from './support/packages.mjs';
-import { freePort, isReady } from './support/ports.mjs';
-import { waitUntil } from './support/processes.mjs';
+import { freePort } from './support/ports.mjs';
 
 /**
  * All the tests, on a database cluster and ports of their own that are thrown away afterwards.
@@ -76,9 +75,9 @@ async function e2e() {
     DEMO: 'true',
     NODE_ENV: 'production',
   };
-  for (const name of Object.keys(PROGRAMS)) ends.push(keepRunning(name, settings, () => undefined).stop);
-  if (!(await waitUntil(() => isReady(port), 60)))
-    throw new Stop('The server under test does not become ready.');
+  const children = startAll(settings, port);
+  ends.push(children.stop);
+  if (!(await children.ready)) throw new Stop('The server under test does not become ready.');
 
   const report = join(folder, 'e2e.json');
   const passed = await tool(

@@ -30,7 +30,8 @@ server.on('checkContinue', (request, response) => {
   serve(request, response);
 });
 server.listen(port, host, () => {
-  if (!process.send) console.log(`Serving ${origin.origin} on ${host}:${port}`);
+  if (process.send) process.send('ready');
+  else console.log(`Serving ${origin.origin} on ${host}:${port}`);
 });
 
 /** Built files carry a hash of their content in their name. */

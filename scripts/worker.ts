@@ -28,6 +28,7 @@ const queue = await workQueue(url, handlers, (error) => log.error('queue', { err
 const signalLife = () =>
   beat(startedAt).catch((error: unknown) => log.error('no sign of life given', { error }));
 await signalLife();
+process.send?.('ready');
 const pulse = setInterval(signalLife, BEAT.every * 1000);
 
 let stopping = false;

@@ -1,4 +1,4 @@
-import { type Connection, connection, type Database, driverOf, type Tx } from './client';
+import { connection, type Database, driverOf, type Tx } from './client';
 
 export type Tenant = { readonly practiceId: string; readonly personId: string | null };
 
@@ -10,9 +10,9 @@ export type Tenant = { readonly practiceId: string; readonly personId: string | 
 export function withPractice<T>(
   tenant: Tenant,
   work: (tx: Tx) => Promise<T>,
-  { db }: Pick<Connection, 'db'> = connection(),
+  database: Database = connection().db,
 ): Promise<T> {
-  return db.transaction(async (tx) => {
+  return database.transaction(async (tx) => {
     const settings = driverOf(tx)`select set_config('app.practice_id', ${tenant.practiceId}, true),
       set_config('app.person_id', ${tenant.personId ?? ''}, true)`.execute();
     const [value] = await Promise.all([work(tx), settings]);

@@ -17,6 +17,9 @@ type Draft = {
   ei: number;
 };
 
+/** The beam that a load is put on. */
+type Bare = { draft: Draft; hinges: number[]; supports: SupportDocument[]; steps: number[] };
+
 /**
  * A plausible beam of 1 to 12 spans with any support, spring, movement, hinge, step, and load, and points that fall on
  * one another on purpose. Hinges may make a mechanism of it: the caller skips what the model refuses as unstable.
@@ -25,16 +28,18 @@ export function randomBeam(seed: number): BeamDocument {
   const draft = layOut(dice(seed));
   const hinges = randomHinges(draft);
   const supports = draft.places.map((at) => randomSupport(draft, at, hinges.includes(at)));
-  if (draft.roll.chance(0.08)) supports.push({ at: placeFor(draft), kind: 'free' });
+  const bare = placeFor(draft);
+  if (draft.roll.chance(0.15) && !draft.places.includes(bare)) supports.push({ at: bare, kind: 'free' });
   const segments = randomSegments(draft);
-  const count = draft.roll.chance(0.07) ? 0 : draft.roll.whole(1, 6);
-  const loads = Array.from({ length: count }, () => randomLoad(draft, hinges, supports));
+  const count = draft.roll.chance(0.07) ? 0 : draft.roll.whole(1, 7);
+  const steps = segments.slice(1).map(({ from }) => from);
+  const loads = Array.from({ length: count }, () => randomLoad({ draft, hinges, supports, steps }));
   return { length: draft.length, segments, supports, hinges, loads, horizontal: 'ignore' };
 }
 
 function layOut(roll: Dice): Draft {
   const span = roll.logBetween(1, 12);
-  const spans = roll.whole(1, 12);
+  const spans = Math.min(12, roll.whole(1, 13)); // long beams turn mechanisms more often
   const places = [roll.chance(0.3) ? span * roll.logBetween(0.05, 0.6) : 0];
   const cantilever = spans === 1 && roll.chance(0.7);
   for (let k = 0; k < spans; k++) places.push(places.at(-1)! + span * roll.logBetween(0.4, 1.8));
@@ -60,7 +65,7 @@ function placeFor({ roll, length, points }: Draft): number {
 
 function randomHinges(draft: Draft): number[] {
   const { roll, places, points, length } = draft;
-  if (!roll.chance(0.5)) return [];
+  if (places.length === 1 || !roll.chance(0.5)) return [];
   const inner = places.filter((at) => at > 0 && at < length);
   const wanted = roll.whole(1, Math.max(1, Math.floor(places.length / 2)));
   const hinges = Array.from({ length: wanted }, () =>
@@ -97,7 +102,7 @@ function randomSupport(
 
 function randomSegments(draft: Draft): SegmentDocument[] {
   const { roll, length, points, ei, span } = draft;
-  const steps = roll.chance(0.4) ? roll.whole(1, 3) : 0;
+  const steps = roll.chance(0.5) ? roll.whole(1, 4) : 0;
   const inner = points.filter((x) => x > 0 && x < length);
   const cuts = Array.from({ length: steps }, () =>
     inner.length > 0 && roll.chance(0.5) ? roll.pick(inner) : placeFor(draft),
@@ -111,10 +116,11 @@ function randomSegments(draft: Draft): SegmentDocument[] {
   });
 }
 
-function randomLoad(draft: Draft, hinges: readonly number[], supports: readonly SupportDocument[]): Load {
+function randomLoad(bare: Bare): Load {
+  const { draft, hinges } = bare;
   const { roll, span, w, ei } = draft;
   const size = roll.chance(0.04) ? 0 : (roll.chance(0.25) ? -1 : 1) * roll.logBetween(0.1, 3);
-  const where = () => loadPlace(draft, hinges, supports);
+  const where = () => loadPlace(bare);
   switch (roll.pick(['point', 'point', 'line', 'line', 'line', 'couple', 'curvature'] as const)) {
     case 'point':
       return { kind: 'point', at: where(), p: size * w * span };
@@ -149,7 +155,7 @@ function stretch({ roll, length }: Draft, where: () => number): [number, number]
 }
 
 /** Often on a point that is already something: a support, a hinge, an end, a step, another load. */
-function loadPlace(draft: Draft, hinges: readonly number[], supports: readonly SupportDocument[]): number {
+function loadPlace({ draft, hinges, supports, steps }: Bare): number {
   const { roll, length, points } = draft;
   if (roll.chance(0.45)) return placeFor(draft);
   if (roll.chance(0.05)) {
@@ -157,5 +163,6 @@ function loadPlace(draft: Draft, hinges: readonly number[], supports: readonly S
     return Math.min(length, at * (1 + 2 ** -51)); // a rounding beside the support, as sums of lengths give
   }
   if (hinges.length > 0 && roll.chance(0.3)) return roll.pick(hinges);
+  if (steps.length > 0 && roll.chance(0.55)) return roll.pick(steps);
   return roll.chance(0.15) ? roll.pick([0, length]) : roll.pick(points);
 }

@@ -12,7 +12,10 @@ export type Scales = { force: number; moment: number; rotation: number; deflecti
  */
 const FLOOR = 1e-5;
 
-/** Largest values found in the beam and both its solutions; natural sizes follow from the loads by F·L, M·L/EI, θ·L. */
+/**
+ * Largest values found in the beam and both its solutions. Natural sizes follow from them by F·L, M/L, M·L/EI and θ·L, and
+ * from what movement or curvature would cost if it were wholly prevented, EI times the strain.
+ */
 export function scalesOf(beam: Beam, reactions: readonly Reaction[], check: StiffnessSolution): Scales {
   const states = check.pieces.flatMap(({ left, middle, right }) => [left, middle, right]);
   const all = [...reactions, ...check.reactions];
@@ -36,10 +39,9 @@ export function scalesOf(beam: Beam, reactions: readonly Reaction[], check: Stif
   const rotation = magnitude([largest((s) => s.slope), ...turns]);
   const deflection = magnitude([largest((s) => s.deflection), ...rises]);
 
-  // A determinate beam yields to prescribed movement and curvature without force.
   const strain = curvature + magnitude(turns) / span + magnitude(rises) / span ** 2;
-  const restrained = beam.degree > 0 ? stiffest * strain : 0;
-  const naturalForce = Math.max(force, restrained / span);
+  const restrained = stiffest * strain;
+  const naturalForce = Math.max(force, moment / beam.length, restrained / span);
   const naturalMoment = Math.max(moment, restrained, naturalForce * beam.length);
   const naturalRotation = Math.max(
     rotation,

@@ -1,0 +1,3 @@
+/** The settings that requests of the tests are served under. */
+export const ORIGIN = 'http://localhost:4321';
+export const DEMO = false;

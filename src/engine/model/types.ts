@@ -95,7 +95,8 @@ export type FaultCode =
   | 'unstable'
   | 'wrong_count'
   | 'ineligible_redundant'
-  | 'inadmissible_redundants';
+  | 'inadmissible_redundants'
+  | 'unproven';
 
 /** Corners of a displaced shape that is straight between them; the largest deflection is 1. */
 export type DisplacedShape = { x: number; deflection: number }[];

@@ -1,0 +1,89 @@
+import { z } from 'zod';
+import { SUPPORT_KINDS } from '@/engine/model/index';
+import { DIMENSION_WORDS, type DimensionName, readQuantity } from '@/engine/quantity/index';
+
+/** Sizes beyond which a request is no beam of a building, and would keep others waiting. */
+export const LIMITS = { supports: 400, hinges: 400, segments: 400, loads: 2000, stations: 5001 } as const;
+
+/** A JSON number in SI, or what a person types, with its unit. */
+const quantity = (dimension: DimensionName) =>
+  z
+    .union([z.number(), z.string()], {
+      error: ({ input }) =>
+        input === undefined
+          ? undefined
+          : `Give ${DIMENSION_WORDS[dimension]}: a finite number in SI units, or text with its unit.`,
+    })
+    .transform((given, context) => {
+      if (typeof given === 'number') return given;
+      const reading = readQuantity(given, dimension);
+      if (reading.ok) return reading.value;
+      const { code, message } = reading;
+      context.issues.push({ code: 'custom', input: given, message, params: { code } });
+      return z.NEVER;
+    });
+
+const position = quantity('length');
+const shearStiffness = quantity('shear_stiffness').nullable().optional();
+const group = z.string().min(1).max(60).optional();
+
+const Segment = z.strictObject({
+  from: position,
+  to: position,
+  ei: quantity('bending_stiffness'),
+  ga: shearStiffness,
+});
+
+const Support = z.strictObject({
+  at: position,
+  kind: z.enum(SUPPORT_KINDS),
+  kv: quantity('spring').optional(),
+  kr: quantity('rotational_spring').optional(),
+  rise: quantity('length').optional(),
+  rotation: quantity('rotation').optional(),
+});
+
+const lineLoad = quantity('line_load');
+const Load = z.discriminatedUnion('kind', [
+  z.strictObject({ kind: z.literal('point'), at: position, p: quantity('force'), group }),
+  z.strictObject({
+    kind: z.literal('line'),
+    from: position,
+    to: position,
+    w0: lineLoad,
+    w1: lineLoad,
+    group,
+  }),
+  z.strictObject({ kind: z.literal('couple'), at: position, m: quantity('moment'), group }),
+  z.strictObject({
+    kind: z.literal('curvature'),
+    from: position,
+    to: position,
+    kappa: quantity('curvature'),
+    group,
+  }),
+]);
+
+const Redundant = z.discriminatedUnion('component', [
+  z.strictObject({ support: z.int().min(0), component: z.literal(['vertical', 'rotation']) }),
+  z.strictObject({ at: position, component: z.literal('moment') }),
+]);
+
+/** The body of POST /api/v1/beams/solve. Numbers are SI; a quantity may be text with its unit instead. */
+export const solveRequest = z.strictObject({
+  length: position,
+  segments: z.array(Segment).max(LIMITS.segments).optional(),
+  ei: quantity('bending_stiffness').optional(),
+  ga: shearStiffness,
+  supports: z.array(Support).max(LIMITS.supports),
+  hinges: z.array(position).max(LIMITS.hinges).optional(),
+  loads: z.array(Load).max(LIMITS.loads).optional(),
+  redundants: z
+    .array(Redundant)
+    .max(2 * LIMITS.supports)
+    .optional(),
+  stations: z.union([z.int().min(2).max(LIMITS.stations), z.array(position).max(LIMITS.stations)]).optional(),
+  horizontal: z.literal('ignore').optional(),
+});
+
+export type SolveRequest = z.output<typeof solveRequest>;

@@ -21,7 +21,7 @@ export function UnitPick({ label, unit, units, name, onPick }: UnitPickProps) {
       name={name && `${name}.unit`}
       value={unit}
       onChange={(event) => onPick(event.target.value)}
-      className="mr-4 min-h-26 field-sizing-content appearance-none text-right text-schedule text-ink-2 underline decoration-ochre decoration-dotted decoration-[1.5px] underline-offset-3 pointer-coarse:min-h-44"
+      className="mr-4 min-h-26 min-w-28 field-sizing-content appearance-none text-right text-schedule text-ink-2 underline decoration-ochre decoration-dotted decoration-[1.5px] underline-offset-3 pointer-coarse:min-h-44"
     >
       {units.map((offered) => (
         <option key={offered} value={offered}>

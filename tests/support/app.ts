@@ -25,7 +25,7 @@ export interface Ask {
   readonly token?: string;
   readonly origin?: string | null;
   readonly json?: unknown;
-  readonly body?: BodyInit;
+  readonly body?: BodyInit | undefined;
   readonly headers?: Readonly<Record<string, string>>;
   readonly address?: string;
 }

@@ -10,29 +10,23 @@ type LoadTemplate = Beam['loads'][number];
 type Written = LoadTemplate['when'];
 type Wanted = Parameters<typeof expressionFaults>[1];
 
+type Part = readonly [key: string, expression: Written, wanted: Wanted];
+
 /** Faults of the beam's expressions, and of what they speak of. */
 export function checkBeam(template: Template): TemplateFault[] {
   const kinds = kindsOf(template);
   const { beam } = template;
-  const faults = (path: Path, parts: readonly (readonly [string, Written, Wanted])[], scope: Kinds = kinds) =>
+  const faults = (path: Path, parts: readonly Part[], scope: Kinds = kinds): TemplateFault[] =>
     parts.flatMap(([key, expression, wanted]) =>
       expressionFaults(expression, wanted, scope, ['beam', ...path, key]),
     );
+  const span = ({ from, to }: Beam['dimensions'][number] | NonNullable<Beam['segments']>[number]): Part[] => [
+    ['from', from, 'length'],
+    ['to', to, 'length'],
+  ];
   return [
     ...faults([], [['length', beam.length, 'length']]),
-    ...beam.supports.flatMap(({ at, kv, kr, rise, rotation, when }, index) =>
-      faults(
-        ['supports', index],
-        [
-          ['at', at, 'length'],
-          ['kv', kv, 'spring'],
-          ['kr', kr, 'rotational_spring'],
-          ['rise', rise, 'length'],
-          ['rotation', rotation, 'rotation'],
-          ['when', when, 'condition'],
-        ],
-      ),
-    ),
+    ...beam.supports.flatMap((support, index) => faults(['supports', index], partsOfSupport(support))),
     ...(beam.hinges ?? []).flatMap(({ at, when }, index) =>
       faults(
         ['hinges', index],
@@ -42,41 +36,34 @@ export function checkBeam(template: Template): TemplateFault[] {
         ],
       ),
     ),
-    ...(beam.segments ?? []).flatMap(({ from, to, ei }, index) =>
-      faults(
-        ['segments', index],
-        [
-          ['from', from, 'length'],
-          ['to', to, 'length'],
-          ['ei', ei, 'ratio'],
-        ],
-      ),
-    ),
-    ...beam.dimensions.flatMap(({ from, to, when }, index) =>
-      faults(
-        ['dimensions', index],
-        [
-          ['from', from, 'length'],
-          ['to', to, 'length'],
-          ['when', when, 'condition'],
-        ],
-      ),
+    ...(beam.segments ?? []).flatMap((segment, index) =>
+      faults(['segments', index], [...span(segment), ['ei', segment.ei, 'ratio']]),
     ),
     ...beam.loads.flatMap((load, index) => [
       ...faults(['loads', index], partsOf(load), scopeOfLoad(template, kinds, load)),
       ...loadFaults(template, load, ['beam', 'loads', index]),
     ]),
     ...redundantFaults(beam, kinds),
-    ...beam.dimensions.flatMap(({ symbol }, index) =>
-      kinds.get(symbol)?.is === 'number'
+    ...beam.dimensions.flatMap((dimension, index) => [
+      ...faults(['dimensions', index], [...span(dimension), ['when', dimension.when, 'condition']]),
+      ...(kinds.get(dimension.symbol)?.is === 'number'
         ? []
-        : [unknownSymbol(symbol, ['beam', 'dimensions', index, 'symbol'])],
-    ),
+        : [unknownSymbol(dimension.symbol, ['beam', 'dimensions', index, 'symbol'])]),
+    ]),
   ];
 }
 
-function partsOf(load: LoadTemplate): (readonly [string, Written, Wanted])[] {
-  const when = ['when', load.when, 'condition'] as const;
+const partsOfSupport = ({ at, kv, kr, rise, rotation, when }: Beam['supports'][number]): Part[] => [
+  ['at', at, 'length'],
+  ['kv', kv, 'spring'],
+  ['kr', kr, 'rotational_spring'],
+  ['rise', rise, 'length'],
+  ['rotation', rotation, 'rotation'],
+  ['when', when, 'condition'],
+];
+
+function partsOf(load: LoadTemplate): Part[] {
+  const when: Part = ['when', load.when, 'condition'];
   switch (load.kind) {
     case 'point':
       return [['at', load.at, 'length'], ['p', load.p, 'force'], when];

@@ -51,20 +51,67 @@ const source = z.strictObject({
   derivation: words(4000).optional(),
 });
 
-/** The template schema over a schema of its expressions. */
-export function templateSchema<E extends z.ZodType>(expression: E) {
-  const selector = selectorSchema(expression);
-  const tolerance = z.number().positive().max(0.01).optional();
+function ruleSchema<E extends z.ZodType>(expression: E) {
+  return z.strictObject({
+    id: kebab,
+    /** The rule when it holds, as a sentence. */
+    title: words(120),
+    expression,
+    severity: z.enum(SEVERITIES),
+    /** What is wrong and what to do, with {symbols} filled in. */
+    message: words(300),
+    /** Each row of this list must hold. */
+    repeat: symbol.optional(),
+    /** A figure beside the rule, such as a/L. */
+    shown: z.strictObject({ tex, expression }).optional(),
+    /** Values that break it: every rule proves that it can. */
+    trial: z.strictObject({
+      parameters: statedValues,
+      ei: quantityText.optional(),
+      depth: quantityText.optional(),
+    }),
+  });
+}
+
+function resultSchema<E extends z.ZodType>(expression: E) {
+  return z.strictObject({
+    id: kebab,
+    name: words(120),
+    /** Left and right side of the formula; the right side says what `expression` calculates. */
+    tex,
+    formula: tex,
+    quantity: selectorSchema(expression),
+    expression,
+    /** Where the formula holds. */
+    when: expression.optional(),
+    source: kebab,
+  });
+}
+
+function proofCaseSchema<E extends z.ZodType>(expression: E) {
+  const quantity = selectorSchema(expression);
+  const printed = words(40);
   const expectation = z.union([
     /** A closed form of this template, by its id. */
     z.strictObject({ result: kebab }),
-    z.strictObject({ quantity: selector, exact: expression, tolerance }),
+    z.strictObject({ quantity, exact: expression, tolerance: z.number().positive().max(0.01).optional() }),
     /** A printed coefficient: quantity = printed · times, or quantity = over / printed. */
-    z.strictObject({ quantity: selector, printed: words(40), times: expression }),
-    z.strictObject({ quantity: selector, printed: words(40), over: expression }),
+    z.strictObject({ quantity, printed, times: expression }),
+    z.strictObject({ quantity, printed, over: expression }),
     /** A printed quantity, with its unit. */
-    z.strictObject({ quantity: selector, printed: words(40) }),
+    z.strictObject({ quantity, printed }),
   ]);
+  return z.strictObject({
+    name: words(120),
+    parameters: statedValues,
+    ei: quantityText.optional(),
+    source: kebab,
+    expect: z.array(expectation).min(1).max(30),
+  });
+}
+
+/** The template schema over a schema of its expressions. */
+export function templateSchema<E extends z.ZodType>(expression: E) {
   return z.strictObject({
     schema_version: z.literal(1),
     slug: kebab,
@@ -80,6 +127,7 @@ export function templateSchema<E extends z.ZodType>(expression: E) {
     you_get: words(200),
     use: z.array(words(300)).min(1).max(10),
     do_not_use: z.array(words(300)).min(1).max(10),
+    /** How it is solved, in Markdown. */
     method: words(8000),
     parameters: z.array(parameter).min(1).max(20),
     derived: z.array(z.strictObject({ symbol, tex, name: words(60), expression })).max(20),
@@ -90,57 +138,10 @@ export function templateSchema<E extends z.ZodType>(expression: E) {
       /** What changes with EI. */
       affects: z.array(z.enum(AFFECTED)).min(1),
     }),
-    rules: z
-      .array(
-        z.strictObject({
-          id: kebab,
-          /** The rule when it holds, as a sentence. */
-          title: words(120),
-          expression,
-          severity: z.enum(SEVERITIES),
-          /** What is wrong and what to do, with {symbols} filled in. */
-          message: words(300),
-          /** Each row of this list must hold. */
-          repeat: symbol.optional(),
-          /** A figure beside the rule, such as a/L. */
-          shown: z.strictObject({ tex, expression }).optional(),
-          /** Values that break it: every rule proves that it can. */
-          trial: z.strictObject({
-            parameters: statedValues,
-            ei: quantityText.optional(),
-            depth: quantityText.optional(),
-          }),
-        }),
-      )
-      .max(20),
-    results: z
-      .array(
-        z.strictObject({
-          id: kebab,
-          name: words(120),
-          /** Left and right side of the formula; the right side says what `expression` calculates. */
-          tex,
-          formula: tex,
-          quantity: selector,
-          expression,
-          when: expression.optional(),
-          source: kebab,
-        }),
-      )
-      .max(30),
+    rules: z.array(ruleSchema(expression)).max(20),
+    results: z.array(resultSchema(expression)).max(30),
     sources: z.array(source).min(1).max(12),
-    proof_cases: z
-      .array(
-        z.strictObject({
-          name: words(120),
-          parameters: statedValues,
-          ei: quantityText.optional(),
-          source: kebab,
-          expect: z.array(expectation).min(1).max(30),
-        }),
-      )
-      .min(3)
-      .max(40),
+    proof_cases: z.array(proofCaseSchema(expression)).min(3).max(40),
   });
 }
 

@@ -8,6 +8,7 @@ import { reactionMarks } from './strip/elevation-layout';
 import { EditableFigure } from './strip/FigureText';
 import type { Figure } from './strip/figures';
 import { type Frame, frameOf, type StripMode } from './strip/frame';
+import { MechanismMark } from './strip/MechanismMark';
 import { PlumbLine } from './strip/PlumbLine';
 import { spokenReadings } from './strip/readings';
 import { StationAxis, stationLines } from './strip/StationAxis';
@@ -74,6 +75,9 @@ function Drawn({ input, frame, layout, height, ...props }: DrawnProps) {
         restraints={props.restraints ?? NONE}
         figuresOpen={props.onEditFigure !== undefined && !props.dashed}
       />
+      {input.motion !== undefined && (
+        <MechanismMark beam={beam} frame={frame} layout={layout.elevation} motion={input.motion} />
+      )}
       <path className="strip-rule" d={`M0 ${layout.from}H${frame.width}`} />
       {layout.diagrams.map((diagram) => (
         <DiagramStrip key={diagram.quantity} beam={beam} frame={frame} format={format} layout={diagram} />
@@ -129,8 +133,8 @@ function Handles({ frame, layout, height, ...props }: DrawnProps) {
 /** The member to scale across the full width; shear, moment, slope and deflection below it on the same axis, and one plumb line. */
 export function ElevationStrip(props: ElevationStripProps) {
   const host = useRef<HTMLElement>(null);
-  const { beam, solution, envelopes, reactions, symbols, deflectionLimit, depth, format, mode, dashed } =
-    props;
+  const { beam, solution, envelopes, reactions, symbols, deflectionLimit, depth, motion } = props;
+  const { format, mode, dashed } = props;
   const measured = useWidth(host, props.width ?? WIDTHS[mode ?? 'screen']);
   const frame = useFrame(props, mode === 'print' ? (props.width ?? WIDTHS.print) : measured);
   const quantities = props.quantities ?? QUANTITIES;
@@ -146,8 +150,9 @@ export function ElevationStrip(props: ElevationStripProps) {
       deflectionLimit,
       depth,
       momentSide,
+      motion,
     }),
-    [beam, solution, envelopes, reactions, quantities, symbols, deflectionLimit, depth, momentSide],
+    [beam, solution, envelopes, reactions, quantities, symbols, deflectionLimit, depth, momentSide, motion],
   );
   const layout = useMemo(() => layStrip(input, frame, format), [input, frame, format]);
   const height = layout.to + frame.axis;

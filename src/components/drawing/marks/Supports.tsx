@@ -1,4 +1,4 @@
-import type { Support } from '@/engine/model/index';
+import type { SupportKind } from '@/engine/model/index';
 import { groundHatch } from '../geometry/hatch';
 import { spiralPath } from './paths';
 
@@ -10,6 +10,8 @@ export type Seat = {
   underside: number;
   end: 'left' | 'right' | null;
   scale: number;
+  /** A wall's thickness, and how far it reaches beyond the member on either side. */
+  wall?: { thick: number; beyond: number } | undefined;
 };
 
 function Ground({ x, y, scale }: { x: number; y: number; scale: number }) {
@@ -55,9 +57,9 @@ export function Zigzag({ x, underside: y, scale: k }: Seat) {
 }
 
 /** Fixed: a wall face with the member built into it; inside the beam, a wall that it passes through. */
-export function Wall({ x, top, centre, underside, end, scale: k }: Seat) {
-  const reach = (underside - top) / 2 + 26 * k;
-  const thick = 26 * k;
+export function Wall({ x, top, centre, underside, end, scale: k, wall }: Seat) {
+  const reach = (underside - top) / 2 + (wall?.beyond ?? 26 * k);
+  const thick = wall?.thick ?? 26 * k;
   const left = end === 'left' ? x - thick : end === 'right' ? x : x - thick / 2;
   const high = centre - reach;
   const height = top - high;
@@ -120,8 +122,11 @@ export function Spiral({ x, centre, end, scale: k }: Seat) {
   );
 }
 
+/** What decides the symbol: the kind, and springs where it leaves a movement free. */
+export type Held = { kind: SupportKind; vertical: { kind: string }; rotation: { kind: string } };
+
 /** The symbol of a support as the model holds it; nothing for a free end. */
-export function SupportMark({ support, seat }: { support: Support; seat: Seat }) {
+export function SupportMark({ support, seat }: { support: Held; seat: Seat }) {
   const { kind, vertical, rotation } = support;
   return (
     <>

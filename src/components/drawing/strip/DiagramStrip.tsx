@@ -1,6 +1,7 @@
 import { memo } from 'react';
 import type { Beam } from '@/engine/model/index';
 import type { DrawingFormat } from '../format';
+import { textWidth } from '../geometry/text-width';
 import { namedSupports } from '../names';
 import type { Quantity } from '../signs';
 import { type DiagramLayout, PURPOSE, SYMBOL, TITLE } from './diagram-layout';
@@ -89,14 +90,17 @@ export function EmptyStrip({
   const bottom = top + frame.head + frame.heights[quantity];
   const base = (top + frame.head + bottom) / 2;
   const phone = frame.mode === 'phone';
+  const middle = (frame.x0 + frame.x1) / 2;
+  const gap = message ? textWidth(message, 13.5) / 2 + 8 : 0;
+  const baseline = `M${frame.x0} ${base}H${middle - gap}M${middle + gap} ${base}H${frame.x1}`;
   return (
     <g>
-      <path className="medium-rule" d={`M${frame.x0} ${base}H${frame.x1}`} />
+      <path className="medium-rule" d={baseline} />
       <text x={frame.mode === 'print' ? 10 : 14} y={phone ? top + 17 : top + 22} className="strip-name">
         {TITLE[quantity]}
       </text>
       {message && (
-        <text x={(frame.x0 + frame.x1) / 2} y={base + 4} textAnchor="middle" className="figure not-drawn">
+        <text x={middle} y={base + 4} textAnchor="middle" className="figure not-drawn">
           {message}
         </text>
       )}

@@ -24,6 +24,9 @@ export type Symbols = {
   loads?: readonly (LoadName | undefined)[] | undefined;
 };
 
+/** How far a mechanism is drawn moving, px. */
+export const MECHANISM_REACH = 62;
+
 export type DimensionRow = { y: number; from: number; xs: number[]; pairs: [number, number][] };
 
 export type ElevationLayout = {
@@ -89,11 +92,19 @@ const onPhoneLines = (beam: Beam): number =>
     ) / 3,
   );
 
+type ElevationOptions = {
+  depth: number;
+  symbols?: Symbols | undefined;
+  reactions: boolean;
+  /** A mechanism is drawn, and needs room to move. */
+  moves: boolean;
+};
+
 export function layElevation(
   beam: Beam,
   frame: Frame,
   format: DrawingFormat,
-  { depth, symbols = {}, reactions }: { depth: number; symbols?: Symbols | undefined; reactions: boolean },
+  { depth, symbols = {}, reactions, moves }: ElevationOptions,
 ): ElevationLayout {
   const loads = layLoads({ frame, format, names: symbols.loads ?? [] }, beam.loads);
   const tall = drawnDepth(depth, frame.perMetre, frame.depthMost);
@@ -101,7 +112,7 @@ export function layElevation(
   // A moment's value stands over the member's end, under the heading and the reading.
   const top = Math.max(loads.height + 14, wall + 28, 84 - tall / 2);
   const bottom = top + tall;
-  const first = bottom + roomBelow(beam) - (frame.mode === 'screen' ? 0 : 6);
+  const first = bottom + roomBelow(beam) + (moves ? MECHANISM_REACH : 0) - (frame.mode === 'screen' ? 0 : 6);
   const dimensions = layDimensions(beam, symbols.lengths ?? [], frame, format, first);
   const lines = frame.mode === 'phone' && reactions ? onPhoneLines(beam) : 0;
   return {

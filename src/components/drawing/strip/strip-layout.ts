@@ -1,5 +1,5 @@
 import type { Solution } from '@/engine/beam/index';
-import type { Beam } from '@/engine/model/index';
+import type { Beam, DisplacedShape } from '@/engine/model/index';
 import type { Piecewise } from '@/engine/polynomial/index';
 import type { DrawingFormat } from '../format';
 import { type Peak, peaksOf } from '../geometry/peaks';
@@ -29,6 +29,8 @@ export type StripInput = {
   deflectionLimit?: DeflectionLimit | undefined;
   depth?: number | undefined;
   momentSide: MomentSide;
+  /** How an unstable beam moves; null for one that slides sideways. */
+  motion?: DisplacedShape | null | undefined;
 };
 
 function envelopePeaks({ peaks }: EnvelopeDiagram): Peak[] {
@@ -75,6 +77,7 @@ export function layStrip(input: StripInput, frame: Frame, format: DrawingFormat)
     depth: input.depth ?? beam.length / 22,
     symbols,
     reactions: Boolean(input.reactions ?? input.solution),
+    moves: input.motion !== undefined,
   });
   const from = elevation.height + elevation.reactionHeight;
   const diagrams: DiagramLayout[] = [];

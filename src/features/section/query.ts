@@ -1,0 +1,147 @@
+import { z } from 'zod';
+import { designationRank, SECTION_SHAPES, type SectionShape } from '@/engine/section';
+import type { SectionItem } from './section';
+
+/** What a list may be narrowed and sorted by: the short name in the query, and the field that it means. */
+export const SECTION_MEASURES = {
+  depth: 'depth_mm',
+  width: 'width_mm',
+  mass: 'mass_kg_m',
+  area: 'area_cm2',
+  i_major: 'i_major_cm4',
+  i_minor: 'i_minor_cm4',
+  w_el: 'w_el_cm3',
+  w_pl: 'w_pl_cm3',
+  j: 'j_cm4',
+  iw: 'iw_cm6',
+} as const;
+export type SectionMeasure = keyof typeof SECTION_MEASURES;
+export type SectionField = (typeof SECTION_MEASURES)[SectionMeasure];
+
+const MEASURES = Object.keys(SECTION_MEASURES) as SectionMeasure[];
+
+/** Shapes as people name them, in groups where they do. */
+const SHAPE_NAMES: Readonly<Record<string, readonly SectionShape[]>> = {
+  ...Object.fromEntries(SECTION_SHAPES.map((shape) => [shape, [shape]])),
+  h: ['i'],
+  u: ['channel'],
+  c: ['channel'],
+  hollow: ['rhs', 'shs', 'chs'],
+  timber: ['rectangle'],
+};
+
+const emptyIsNone = (value: unknown) => (value === '' ? undefined : value);
+const bound = z.preprocess(emptyIsNone, z.coerce.number().optional());
+const word = (most: number) => z.preprocess(emptyIsNone, z.string().trim().max(most).optional());
+
+/** "depth_min" and, with the unit in its name, "depth_mm_min". */
+const boundFields = Object.fromEntries(
+  MEASURES.flatMap((measure) => [measure, SECTION_MEASURES[measure]]).flatMap((name) => [
+    [`${name}_min`, bound],
+    [`${name}_max`, bound],
+  ]),
+);
+
+const SORTS = [...MEASURES.flatMap((measure) => [measure, SECTION_MEASURES[measure]]), 'designation'];
+
+/** The query fields of the section list. Spread them, with a list's own, into a strict schema. */
+export const sectionQueryFields = {
+  ...boundFields,
+  q: word(100),
+  table: word(100),
+  shape: z.preprocess(
+    (value) => (typeof value === 'string' ? value.toLowerCase() || undefined : value),
+    z.enum(Object.keys(SHAPE_NAMES)).optional(),
+  ),
+  sort: z.preprocess(emptyIsNone, z.enum(SORTS.flatMap((name) => [name, `-${name}`])).optional()),
+};
+
+export type SectionRange = { field: SectionField; min?: number; max?: number };
+export type SectionQuery = {
+  q: string;
+  table: string | null;
+  shapes: readonly SectionShape[] | null;
+  ranges: readonly SectionRange[];
+  /** Null: best answer to q first, then the lightest. */
+  sort: { field: SectionField | 'designation'; descending: boolean } | null;
+};
+
+/** The query as the schema of sectionQueryFields gives it, made plain. */
+export function toSectionQuery(fields: Readonly<Record<string, unknown>>): SectionQuery {
+  const number = (name: string) => {
+    const value = fields[name];
+    return typeof value === 'number' ? value : undefined;
+  };
+  const text = (name: string) => {
+    const value = fields[name];
+    return typeof value === 'string' && value !== '' ? value : null;
+  };
+  const ranges = MEASURES.flatMap((measure): SectionRange[] => {
+    const field = SECTION_MEASURES[measure];
+    const min = number(`${measure}_min`) ?? number(`${field}_min`);
+    const max = number(`${measure}_max`) ?? number(`${field}_max`);
+    if (min === undefined && max === undefined) return [];
+    return [{ field, ...(min === undefined ? {} : { min }), ...(max === undefined ? {} : { max }) }];
+  });
+  return {
+    q: text('q') ?? '',
+    table: text('table'),
+    shapes: SHAPE_NAMES[text('shape') ?? ''] ?? null,
+    ranges,
+    sort: readSort(text('sort')),
+  };
+}
+
+function readSort(text: string | null): SectionQuery['sort'] {
+  if (text === null) return null;
+  const name = text.replace(/^-/, '');
+  const measure = MEASURES.find((one) => one === name || SECTION_MEASURES[one] === name);
+  return { field: measure ? SECTION_MEASURES[measure] : 'designation', descending: text.startsWith('-') };
+}
+
+type Searchable = Pick<SectionItem, 'designation' | 'shape' | 'table' | SectionField>;
+
+/** Ranges are inclusive; a value that a table does not give meets none. */
+export function meetsQuery(item: Searchable, query: SectionQuery): boolean {
+  if (query.table !== null && item.table !== query.table) return false;
+  if (query.shapes !== null && !query.shapes.includes(item.shape)) return false;
+  return query.ranges.every(({ field, min, max }) => {
+    const value = item[field];
+    return (
+      value !== null &&
+      value >= (min ?? Number.NEGATIVE_INFINITY) &&
+      value <= (max ?? Number.POSITIVE_INFINITY)
+    );
+  });
+}
+
+const byName = new Intl.Collator('en', { numeric: true });
+
+function compareBy(a: Searchable, b: Searchable, sort: NonNullable<SectionQuery['sort']>): number {
+  const sign = sort.descending ? -1 : 1;
+  if (sort.field === 'designation') return sign * byName.compare(a.designation, b.designation);
+  const [left, right] = [a[sort.field], b[sort.field]];
+  if (left === null || right === null) return Number(left === null) - Number(right === null);
+  return sign * (left - right);
+}
+
+const LIGHTEST = { field: 'mass_kg_m', descending: false } as const;
+
+/**
+ * The items that answer a query, in its order: an exact designation first, then as sorted, else the better answer
+ * before the lighter section. Ties go by designation, so that the order is always the same.
+ */
+export function selectSections<T extends Searchable>(items: readonly T[], query: SectionQuery): T[] {
+  const ranked = items.flatMap((item) => {
+    const rank = query.q === '' ? 1 : designationRank(query.q, item.designation);
+    return rank !== null && meetsQuery(item, query) ? [{ item, rank }] : [];
+  });
+  const order = (rank: number) => (query.sort ? Math.min(rank, 1) : rank);
+  ranked.sort(
+    (a, b) =>
+      order(a.rank) - order(b.rank) ||
+      compareBy(a.item, b.item, query.sort ?? LIGHTEST) ||
+      byName.compare(a.item.designation, b.item.designation),
+  );
+  return ranked.map(({ item }) => item);
+}

@@ -1,0 +1,109 @@
+import { z } from 'zod';
+import { SECTION_SHAPES, type SectionDimensions, TUBE_STANDARDS } from '@/engine/section';
+
+const length = z.number().positive();
+const radius = z.number().nonnegative();
+const flanged = { h: length, b: length, tw: length, tf: length, r: radius };
+
+/** Dimensions in m, as the engine takes them. */
+export const sectionDimensionsSchema = z.discriminatedUnion('shape', [
+  z.strictObject({ shape: z.literal('i'), ...flanged }),
+  z.strictObject({ shape: z.literal('channel'), ...flanged }),
+  z.strictObject({ shape: z.enum(['rhs', 'shs']), h: length, b: length, t: length, ro: radius, ri: radius }),
+  z.strictObject({ shape: z.literal('chs'), d: length, t: length }),
+  z.strictObject({ shape: z.literal('rectangle'), h: length, b: length }),
+  z.strictObject({ shape: z.literal('round'), d: length }),
+]) satisfies z.ZodType<SectionDimensions>;
+
+const positive = z.number().positive();
+
+/** A row of a section table: what was supplied, or computed from the dimensions where `computed` names it. */
+export const sectionRowSchema = z.strictObject({
+  /** In ASCII, x between sizes. */
+  designation: z.string().min(1),
+  /** As supplied. */
+  printed: z.string().min(1),
+  /** One spelling for however it is typed: engine/section designationKey. */
+  key: z.string().min(1),
+  shape: z.enum(SECTION_SHAPES),
+  depth_mm: positive,
+  width_mm: positive,
+  mass_kg_m: positive,
+  area_cm2: positive,
+  i_major_cm4: positive,
+  i_minor_cm4: positive,
+  w_el_cm3: positive,
+  w_el_minor_cm3: positive,
+  w_pl_cm3: positive,
+  w_pl_minor_cm3: positive,
+  j_cm4: positive,
+  iw_cm6: z.number().nonnegative(),
+  computed: z.array(z.string()),
+  dimensions: sectionDimensionsSchema,
+});
+export type SectionRow = z.infer<typeof sectionRowSchema>;
+
+/** A section as the endpoint gives it; dimensions in mm by their symbol. */
+export const sectionItemSchema = sectionRowSchema
+  .pick({
+    designation: true,
+    printed: true,
+    shape: true,
+    depth_mm: true,
+    width_mm: true,
+    mass_kg_m: true,
+    area_cm2: true,
+    i_major_cm4: true,
+    i_minor_cm4: true,
+    w_el_cm3: true,
+    computed: true,
+  })
+  .extend({
+    table: z.string(),
+    edition: z.int().positive(),
+    w_pl_cm3: positive.nullable(),
+    j_cm4: positive.nullable(),
+    iw_cm6: z.number().nonnegative().nullable(),
+    dimensions_mm: z.record(z.string(), z.number()),
+  });
+export type SectionItem = z.infer<typeof sectionItemSchema>;
+
+const FIGURES = 12; // a length in mm again, without the last bits of its metres
+
+/** Dimensions in mm by their symbol: {h: 300, b: 150, tw: 7.1, tf: 10.7, r: 15}. */
+export function dimensionsMm(dimensions: SectionDimensions): Record<string, number> {
+  return Object.fromEntries(
+    Object.entries(dimensions)
+      .filter((entry): entry is [string, number] => typeof entry[1] === 'number')
+      .map(([symbol, metres]) => [symbol, Number((metres * 1000).toPrecision(FIGURES))]),
+  );
+}
+
+export function toSectionItem(row: SectionRow, table: string, edition: number): SectionItem {
+  const { key: _key, dimensions, w_el_minor_cm3: _el, w_pl_minor_cm3: _pl, ...shown } = row;
+  return { table, edition, ...shown, dimensions_mm: dimensionsMm(dimensions) };
+}
+
+/** What stands beside a section table's CSV: where it comes from and how it is read. */
+export const sectionTableMetaSchema = z.strictObject({
+  slug: z.string().regex(/^[a-z0-9]+(-[a-z0-9]+)*$/),
+  reference: z.string(),
+  name: z.string(),
+  /** Words by which the table is found. */
+  words: z.array(z.string()),
+  standard: z.string(),
+  source: z.string(),
+  edition: z.string(),
+  catalogue_date: z.iso.date(),
+  conventions: z.string(),
+  licence: z.string(),
+  notes: z.array(z.string()),
+  /** Which letters the file gives the axes and moduli; none where its headings say major and minor. */
+  axes: z.enum(['en', 'us', 'british']).optional(),
+  /** Shape of every row, where the file has no column for it. */
+  shape: z.enum(SECTION_SHAPES).optional(),
+  /** Density that the masses stand for. */
+  density_kg_m3: positive.default(7850),
+  tube_standard: z.enum(TUBE_STANDARDS).default('EN 10210'),
+});
+export type SectionTableMeta = z.infer<typeof sectionTableMetaSchema>;

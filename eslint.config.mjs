@@ -42,7 +42,7 @@ const zones = [
   },
   {
     target: './src/features/*/!(*.server|*.server.test|*.api).ts',
-    from: ['./src/db', './src/http', './src/services', './src/components', './src/features/*/*.server.ts'],
+    from: ['./src/{db,http,services,components}/**', './src/features/*/*.server.ts'],
     message: 'A pure feature file takes values and returns values',
   },
   {
@@ -62,10 +62,14 @@ const zones = [
   },
   {
     target: './src/features/*/*.tsx',
-    from: ['./src/db', './src/http', './src/services', './src/features/*/*.server.ts'],
-    message: 'An island runs in the browser: use the feature\'s x.api.ts',
+    from: ['./src/{db,http,services}/**', './src/features/*/*.server.ts'],
+    message: "An island runs in the browser: use the feature's x.api.ts",
   },
-  { target: './src/pages', from: './src/db', message: 'Pages ask use cases (features/*/x.server.ts), never the database' },
+  {
+    target: './src/pages',
+    from: './src/db',
+    message: 'Pages ask use cases (features/*/x.server.ts), never the database',
+  },
   { target: './src/layouts', from: './src/db', message: 'Layouts ask nothing of the database' },
 ];
 
@@ -86,7 +90,9 @@ export default [
     files: ['src/**/*.{ts,tsx,astro}', 'scripts/**/*.{ts,mjs}', 'tests/**/*.ts'],
     plugins: { 'import-x': importX },
     settings: {
-      'import-x/resolver-next': [(await import('eslint-import-resolver-typescript')).createTypeScriptImportResolver()],
+      'import-x/resolver-next': [
+        (await import('eslint-import-resolver-typescript')).createTypeScriptImportResolver(),
+      ],
       'import-x/extensions': ['.ts', '.tsx', '.mjs'],
       'import-x/parsers': { '@typescript-eslint/parser': ['.ts', '.tsx'] },
     },
@@ -112,7 +118,10 @@ export default [
         'error',
         {
           patterns: [
-            { group: ['node:*', 'react', 'react-dom', 'astro', 'astro:*', 'drizzle-orm', 'postgres'], message: 'The engine is pure' },
+            {
+              group: ['node:*', 'react', 'react-dom', 'astro', 'astro:*', 'drizzle-orm', 'postgres'],
+              message: 'The engine is pure',
+            },
             {
               regex: String.raw`^@/engine/[a-z]+/(?!parse$)`,
               message: 'Another engine module is entered through its index.ts',
@@ -121,7 +130,10 @@ export default [
         },
       ],
       'no-restricted-globals': ['error', 'Date', 'fetch', 'process', 'window', 'document'],
-      'no-restricted-properties': ['error', { object: 'Math', property: 'random', message: 'Same input, same answer' }],
+      'no-restricted-properties': [
+        'error',
+        { object: 'Math', property: 'random', message: 'Same input, same answer' },
+      ],
     },
   },
   {

@@ -1,3 +1,4 @@
+import { requirePermission } from '@/features/account/permission';
 import { solveAnswer, solveDocument, solveRequest } from '@/features/beam/beam';
 import { endpoint } from '@/http/endpoint';
 import { invalid } from '@/lib/app-error';
@@ -10,7 +11,8 @@ export const POST = endpoint(
     body: solveRequest,
     answer: solveAnswer,
   },
-  (_, { body }) => {
+  (_, { user, body }) => {
+    requirePermission(user, 'beam.solve');
     const outcome = solveDocument(body);
     if (!outcome.ok) throw invalid(outcome.errors);
     return outcome.answer;

@@ -1,4 +1,4 @@
-import { Sum, settled, Wide } from '../linear/index';
+import { Sum, Wide } from '../linear/index';
 import type { Load } from '../model/index';
 import { actionsOf } from './actions';
 import type { Flexibility } from './flexibility';
@@ -55,17 +55,16 @@ function closing(
   { actions, released }: Pick<Superposed, 'actions' | 'released'>,
 ): Wide[] {
   const values = factors.solve(missing);
-  const isForce = (component: string) => component === 'vertical';
-  const forces = [
-    ...released.filter((_, c) => isForce(reactions[c]!.component)),
-    ...values.filter((_, i) => isForce(redundants[i]!.component)),
-  ];
-  const couples = [
-    ...released.filter((_, c) => !isForce(reactions[c]!.component)),
-    ...values.filter((_, i) => !isForce(redundants[i]!.component)),
-  ];
+  const forces: Wide[] = [];
+  const couples: Wide[] = [];
+  const listOf = (component: string) => (component === 'vertical' ? forces : couples);
+  reactions.forEach(({ component }, c) => {
+    listOf(component).push(released[c]!);
+  });
+  redundants.forEach(({ component }, i) => {
+    listOf(component).push(values[i]!);
+  });
   const floor = floorOf(mesh, actions, forces, couples);
-  return values.map(
-    (value, i) => settled([value], isForce(redundants[i]!.component) ? floor.force : floor.couple)[0]!,
-  );
+  const floors = redundants.map(({ component }) => (component === 'vertical' ? floor.force : floor.couple));
+  return values.map((value, i) => (Math.abs(value.hi) > floors[i]! ? value : Wide.ZERO));
 }

@@ -2,8 +2,11 @@ import { largest, type Wide } from '../linear/index';
 import type { Actions } from './actions';
 import type { Mesh } from './mesh';
 
-/** Part of the largest force below which a force is rounding's, whatever redundants it was computed through. */
-const NOTHING = 1e-18;
+/**
+ * Part of the largest force below which a force is rounding's: what 32 digits leave of a zero that was computed through
+ * redundants of condition 10¹⁰. Not more, since the small force in a soft spring still tells where its point is.
+ */
+const NOTHING = 1e-22;
 
 /** Forces, N, and moments, N·m, that are nothing beside those that act on the beam or in it. */
 export type Floor = { force: number; couple: number };

@@ -35,19 +35,27 @@ export function eligibleRedundants(beam: Beam): Redundant[] {
 
 /**
  * The beam's own choice: support moments first, by position, since simple spans keep the flexibility matrix banded and
- * well conditioned; then vertical reactions, inner supports before outer ones. Always admissible.
+ * well conditioned; then vertical reactions, inner supports before outer ones. A spring softer than the whole beam goes
+ * before all others, since what rests on it would make every flexibility alike. Always admissible.
  */
 export function defaultRedundants(beam: Beam): Redundant[] {
   const middle = beam.length / 2;
   const place = (r: Redundant) => (r.component === 'moment' ? r.at : beam.supports[r.support]!.at);
-  const rank = (r: Redundant) =>
-    r.component === 'vertical' ? beam.length + Math.abs(place(r) - middle) : place(r);
+  const rank = (r: Redundant) => {
+    if (r.component !== 'vertical') return place(r);
+    return isSoft(beam, beam.supports[r.support]!.vertical) ? -1 : beam.length + Math.abs(place(r) - middle);
+  };
   const chosen: Redundant[] = [];
   for (const redundant of eligibleRedundants(beam).sort((a, b) => rank(a) - rank(b))) {
     if (chosen.length === beam.degree) break;
     if (isStable(beam, [...chosen, redundant])) chosen.push(redundant);
   }
   return chosen.sort((a, b) => place(a) - place(b));
+}
+
+function isSoft({ length, segments }: Beam, restraint: Restraint): boolean {
+  const stiffest = Math.max(...segments.map(({ ei }) => ei));
+  return restraint.kind === 'spring' && restraint.stiffness * length ** 3 < stiffest;
 }
 
 /** Every admissible set of eligible redundants: those whose release, all at once, leaves the beam stable. */

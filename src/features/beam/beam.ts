@@ -10,6 +10,7 @@ import {
   readBeam,
 } from '@/engine/model/index';
 import { isProven, proofLimit, proveSolution } from '@/engine/proof/index';
+import { SingularStiffness } from '@/engine/stiffness/index';
 import type { Fault } from '@/lib/app-error';
 import { pointer } from '@/lib/pointer';
 import { read } from '@/lib/read';
@@ -66,17 +67,25 @@ function solveProven(
     const proof = proveSolution(beam, solution);
     if (isProven(proof, beam)) return { ok: true, value: { solution, proof } };
     const largest = Math.max(proof.equilibrium, proof.compatibility, proof.agreement);
-    const message = `The two methods differ by ${largest.toPrecision(2)}, more than ${proofLimit(beam)}: there is no result to show. Look for points that almost coincide, or stiffnesses that are far apart.`;
-    return { ok: false, faults: [{ path: [], code: 'unproven', message }] };
+    return unproven(`Its proof is off by ${largest.toPrecision(2)}, more than ${proofLimit(beam)}.`);
   } catch (error) {
-    if (!(error instanceof SingularMatrix) || !redundants) throw error;
-    const name = nameRedundant(beam, redundants[error.row]!);
-    const message = `Among these redundants, ${name} repeats the others to within rounding. Choose another set.`;
-    return {
-      ok: false,
-      faults: [{ path: ['redundants', error.row], code: 'inadmissible_redundants', message }],
-    };
+    if (error instanceof SingularMatrix && redundants) {
+      const name = nameRedundant(beam, redundants[error.row]!);
+      const message = `Among these redundants, ${name} repeats the others to within rounding. Choose another set.`;
+      const path = ['redundants', error.row];
+      return { ok: false, faults: [{ path, code: 'inadmissible_redundants', message }] };
+    }
+    if (error instanceof SingularMatrix || error instanceof SingularStiffness) {
+      return unproven('It is beyond the digits that are carried.');
+    }
+    throw error;
   }
+}
+
+/** Points or stiffnesses too far apart in size are all that is known to bring this about. */
+function unproven(why: string): { ok: false; faults: ModelFault[] } {
+  const message = `There is no result that can be trusted. ${why} Look for points that almost coincide, and for stiffnesses that are far apart.`;
+  return { ok: false, faults: [{ path: [], code: 'unproven', message }] };
 }
 
 function forceMethodOf({ forceMethod }: Solution): SolveAnswer['force_method'] {

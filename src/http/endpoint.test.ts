@@ -3,6 +3,7 @@ import { describe, expect, test, vi } from 'vitest';
 import { z } from 'zod';
 import type { User } from '@/features/account/account';
 import { AppError, notFound } from '@/lib/app-error';
+import { readForm } from './body';
 import { answer, type Endpoint, endpoint, openEndpoint } from './endpoint';
 import { etag, ifMatch } from './etag';
 import { listQuery } from './list';
@@ -238,5 +239,25 @@ describe('If-Match', () => {
     expect(() => version()).toThrow(expect.objectContaining({ status: 428 }));
     for (const header of ['3', '"abc"', '*', '"-1"', '"1", "2"'])
       expect(() => version(header)).toThrow(expect.objectContaining({ status: 412 }));
+  });
+});
+
+describe('a form', () => {
+  const post = (body: BodyInit, headers: Record<string, string> = {}) =>
+    readForm({ request: new Request('http://localhost/', { method: 'POST', body, headers }) });
+
+  test('is read in either encoding of a page', async () => {
+    expect((await post(new URLSearchParams({ email: 'a@b.example' }))).get('email')).toBe('a@b.example');
+    const form = new FormData();
+    form.set('email', 'a@b.example');
+    expect((await post(form)).get('email')).toBe('a@b.example');
+  });
+
+  test.each([
+    [415, '{}', { 'content-type': 'application/json' }],
+    [422, 'no parts', { 'content-type': 'multipart/form-data; boundary=x' }],
+    [413, 'x'.repeat(1_000_001), { 'content-type': 'application/x-www-form-urlencoded' }],
+  ])('is refused with %d', async (status, body, headers) => {
+    await expect(post(body, headers)).rejects.toMatchObject({ status });
   });
 });

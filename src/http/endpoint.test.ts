@@ -137,7 +137,9 @@ describe('the body', () => {
 
   test('that is deep without end is refused, not followed', async () => {
     const deep = '['.repeat(400_000) + ']'.repeat(400_000);
-    expect(await codes({ body: `{"length": ${deep}}` })).toEqual([422, '/length/0/0/0/0/0/0/0 too_deep']);
+    expect(await codes({ body: `{"length": ${deep}}` })).toEqual([422, ' too_deep']);
+    const text = JSON.stringify({ length: 1, note: '[{"\\\\"'.repeat(100) });
+    expect(await codes({ body: text })).toEqual([422, '/note unknown_field']); // brackets in a text are no levels
   });
 
   test('does not reach a prototype', async () => {

@@ -232,12 +232,15 @@ CREATE TABLE "section" (
 	"i_major_cm4" double precision NOT NULL,
 	"i_minor_cm4" double precision NOT NULL,
 	"w_el_cm3" double precision NOT NULL,
+	"w_el_minor_cm3" double precision,
 	"w_pl_cm3" double precision,
+	"w_pl_minor_cm3" double precision,
 	"j_cm4" double precision,
 	"iw_cm6" double precision,
 	"computed" text[] DEFAULT '{}' NOT NULL,
 	"dimensions" jsonb NOT NULL,
-	CONSTRAINT "section_practice_id_id_pk" PRIMARY KEY("practice_id","id")
+	CONSTRAINT "section_practice_id_id_pk" PRIMARY KEY("practice_id","id"),
+	CONSTRAINT "section_shape" CHECK ("section"."shape" in ('i', 'channel', 'rhs', 'shs', 'chs', 'rectangle', 'round'))
 );
 --> statement-breakpoint
 ALTER TABLE "section" ENABLE ROW LEVEL SECURITY;--> statement-breakpoint

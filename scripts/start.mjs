@@ -5,7 +5,7 @@ import { ensureBuild } from './support/build.mjs';
 import { PROGRAMS, startAll } from './support/children.mjs';
 import { startCluster, stopCluster } from './support/cluster.mjs';
 import { Stop, step } from './support/command.mjs';
-import { migrateDatabase, openDatabase, seedDatabase } from './support/database.mjs';
+import { openDatabase, prepareDatabase } from './support/database.mjs';
 import { openHome, readJson, writeJson } from './support/home.mjs';
 import { ensureNodePackages } from './support/packages.mjs';
 import { isReady, portIsFree } from './support/ports.mjs';
@@ -33,8 +33,7 @@ async function main() {
   if (!process.env.DATABASE_URL) ends.push(() => stopCluster(home.data));
   const database = await openDatabase(home);
   record.database = database.app;
-  await migrateDatabase(database);
-  const signIns = await seedDatabase(database);
+  const signIns = await prepareDatabase(database, { demo: true });
   await ensureBuild();
   await step('Starting web and worker', () => startChildren(home, record, database));
   if (database.cluster) ends.push(watchCluster(home, database.cluster));
@@ -64,7 +63,7 @@ async function claim(home, record) {
 }
 
 async function sayRunning({ port: at, origin: address }) {
-  const ready = await waitUntil(() => isReady(at), 90);
+  const ready = await waitUntil(() => isReady(at), 90, 1000);
   console.log(
     ready ? `Putlog is running at ${address}` : `Putlog is starting at ${address}, and not ready yet.`,
   );

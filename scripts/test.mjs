@@ -7,7 +7,7 @@ import { ensureBuild } from './support/build.mjs';
 import { startAll } from './support/children.mjs';
 import { startCluster, stopCluster } from './support/cluster.mjs';
 import { ROOT, Stop, step } from './support/command.mjs';
-import { createDatabase, migrateDatabase, seedDatabase, urls } from './support/database.mjs';
+import { createDatabase, prepareDatabase, urls } from './support/database.mjs';
 import { openHome, readJson } from './support/home.mjs';
 import { ensureDebianPackages, ensureNodePackages } from './support/packages.mjs';
 import { freePort } from './support/ports.mjs';
@@ -56,15 +56,14 @@ function pure() {
 }
 
 async function database() {
-  const { owner, app } = await newDatabase('putlog_test');
+  const { owner, app } = await newDatabase('putlog_test', { demo: false });
   return vitest('database', { DATABASE_URL: app, OWNER_DATABASE_URL: owner });
 }
 
 /** The journeys through the screens, on a server of their own with the demo practice. */
 async function e2e() {
   if (!existsSync(join(ROOT, 'playwright.config.ts'))) return true;
-  const { owner, app } = await newDatabase('putlog_e2e');
-  await seedDatabase({ owner });
+  const { owner, app } = await newDatabase('putlog_e2e', { demo: true });
   await ensureBuild();
   const port = await freePort();
   const origin = `http://localhost:${port}`;
@@ -92,13 +91,13 @@ async function e2e() {
   return passed;
 }
 
-async function newDatabase(name) {
+async function newDatabase(name, options) {
   cluster ??= await step('Starting a PostgreSQL for the tests', () =>
     startCluster({ data: home.data, password: home.ownerPassword, settings: FAST }),
   );
   await createDatabase(cluster.url, name);
   const both = urls(cluster.urlOf(name), home);
-  await migrateDatabase(both);
+  await prepareDatabase(both, options);
   return both;
 }
 

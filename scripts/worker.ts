@@ -3,11 +3,7 @@ import { sweepSignIns } from '@/features/account/sweep.server';
 import { BEAT, beat } from '@/features/admin/health.server';
 import { verifyAllChains } from '@/features/audit/audit.server';
 import { log } from '@/lib/log';
-import { type Task, workQueue } from '@/services/queue';
-
-const url = process.env['DATABASE_URL'];
-if (!url)
-  throw new Error('DATABASE_URL is not set: give the connection of the role that web and worker share');
+import { type Queue, type Task, workQueue } from '@/services/queue';
 
 const handlers: Readonly<Record<Task, () => Promise<void>>> = {
   'sweep-sign-ins': async () => {
@@ -21,26 +17,42 @@ const handlers: Readonly<Record<Task, () => Promise<void>>> = {
   },
 };
 
-const startedAt = new Date();
-const queue = await workQueue(url, handlers, (error) => log.error('queue', { error }));
-
-/** Late by one database failover, never dead by it. */
-const signalLife = () =>
-  beat(startedAt).catch((error: unknown) => log.error('no sign of life given', { error }));
-await signalLife();
-process.send?.('ready');
-const pulse = setInterval(signalLife, BEAT.every * 1000);
-
-let stopping = false;
-async function stop(): Promise<void> {
-  if (stopping) return;
-  stopping = true;
-  clearInterval(pulse);
-  await queue.stop();
-  await closeConnection();
-  process.exit(0);
+/** Works the queue, and gives a sign of life: late by one database failover, never dead by it. */
+async function work(): Promise<Queue> {
+  const url = process.env['DATABASE_URL'];
+  if (!url)
+    throw new Error('DATABASE_URL is not set: give the connection of the role that web and worker share');
+  const startedAt = new Date();
+  const queue = await workQueue(url, handlers, (error) => log.error('queue', { error }));
+  await beat(startedAt);
+  const pulse = setInterval(
+    () => beat(startedAt).catch((error: unknown) => log.error('no sign of life given', { error })),
+    BEAT.every * 1000,
+  );
+  process.send?.('ready');
+  return {
+    stop: async () => {
+      clearInterval(pulse);
+      await queue.stop();
+      await closeConnection();
+    },
+  };
 }
 
-for (const signal of ['SIGTERM', 'SIGINT'] as const) process.on(signal, stop);
+/** Ends the process; whoever keeps it running starts another. */
+async function end(code: number, queue?: Promise<Queue>): Promise<never> {
+  await queue
+    ?.then(({ stop }) => stop())
+    .catch((error: unknown) => log.error('worker not ended well', { error }));
+  process.exit(code);
+}
+
+const queue = work();
+queue.catch((error: unknown) => {
+  log.error('worker cannot work', { error });
+  return end(1);
+});
+
+for (const signal of ['SIGTERM', 'SIGINT'] as const) process.once(signal, () => end(0, queue));
 // The program that started us is gone, and with it whoever would have stopped us.
-process.on('disconnect', stop);
+process.once('disconnect', () => end(0, queue));

@@ -45,12 +45,11 @@ export async function createDatabase(serverUrl, name) {
   }
 }
 
-/** Migrations as the owner, then the role that web and worker sign in with, then the queue's own tables. */
-export const migrateDatabase = ({ owner, app }) =>
-  step('Bringing the database up to date', () =>
-    runScript('migrate', [], { DATABASE_URL: owner, APP_DATABASE_URL: app }),
+/**
+ * Migrations, the queue's tables, the role of web and worker, and with `demo` the demo practice where there is none
+ * yet. Answers with the demo's sign-ins.
+ */
+export const prepareDatabase = ({ owner, app }, { demo }) =>
+  step('Preparing the database', () =>
+    runScript('prepare', demo ? ['--demo'] : [], { DATABASE_URL: owner, APP_DATABASE_URL: app }),
   );
-
-/** What a new installation starts with; nothing where there is a practice already. Answers with the demo's sign-ins. */
-export const seedDatabase = ({ owner }) =>
-  step('Looking after the demo practice', () => runScript('seed', [], { DATABASE_URL: owner }));

@@ -1,4 +1,5 @@
 import {
+  check,
   doublePrecision,
   foreignKey,
   index,
@@ -9,10 +10,14 @@ import {
   uniqueIndex,
   uuid,
 } from 'drizzle-orm/pg-core';
+import { SECTION_SHAPES, type SectionDimensions } from '@/engine/section';
 import { revision } from './library';
-import { id, practiceId, tenantPolicy } from './tenant';
+import { id, oneOf, practiceId, tenantPolicy } from './tenant';
 
-/** A row of one edition of a section table. Written while the edition is a draft, frozen with it. */
+/**
+ * A row of one edition of a section table. Written while the edition is a draft, frozen with it. No trigram index: its
+ * operators are not leakproof, so that under row-level security the planner never uses it.
+ */
 export const section = pgTable(
   'section',
   {
@@ -24,7 +29,7 @@ export const section = pgTable(
     /** The designation as it is searched for: one spelling for however it is typed. */
     designationKey: text().notNull(),
     printed: text().notNull(),
-    shape: text().notNull(),
+    shape: text({ enum: SECTION_SHAPES }).notNull(),
     depthMm: doublePrecision().notNull(),
     widthMm: doublePrecision().notNull(),
     massKgM: doublePrecision().notNull(),
@@ -32,11 +37,14 @@ export const section = pgTable(
     iMajorCm4: doublePrecision('i_major_cm4').notNull(),
     iMinorCm4: doublePrecision('i_minor_cm4').notNull(),
     wElCm3: doublePrecision('w_el_cm3').notNull(),
+    wElMinorCm3: doublePrecision('w_el_minor_cm3'),
     wPlCm3: doublePrecision('w_pl_cm3'),
+    wPlMinorCm3: doublePrecision('w_pl_minor_cm3'),
     jCm4: doublePrecision('j_cm4'),
     iwCm6: doublePrecision('iw_cm6'),
+    /** Names of the columns that were computed from the dimensions, not supplied. */
     computed: text().array().notNull().default([]),
-    dimensions: jsonb().$type<Record<string, number>>().notNull(),
+    dimensions: jsonb().$type<SectionDimensions>().notNull(),
   },
   (table) => [
     primaryKey({ columns: [table.practiceId, table.id] }),
@@ -48,6 +56,7 @@ export const section = pgTable(
     uniqueIndex('section_designation').on(table.practiceId, table.revisionId, table.designationKey),
     index('section_depth').on(table.practiceId, table.revisionId, table.depthMm),
     index('section_mass').on(table.practiceId, table.revisionId, table.massKgM),
+    check('section_shape', oneOf(table.shape, SECTION_SHAPES)),
     tenantPolicy('section'),
   ],
 );

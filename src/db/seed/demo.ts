@@ -1,5 +1,7 @@
 import { seedCriteria } from './criteria';
 import { findDemoPeople, foundDemoPractice } from './people';
+import { seedSections } from './sections';
+import { seedTemplates } from './templates';
 
 /**
  * The demo practice and the library it starts with. What is there already stays as it is.
@@ -9,6 +11,8 @@ export async function seedDemo(): Promise<boolean> {
   await foundDemoPractice();
   const people = await findDemoPeople();
   if (!people) return false;
+  await seedSections(people);
   await seedCriteria(people);
+  await seedTemplates(people);
   return true;
 }

@@ -1,4 +1,5 @@
 import { and, eq } from 'drizzle-orm';
+import type { DocumentKind, RevisionState } from '@/features/review/review';
 import { createDraft, type Draft, takeStep } from '@/features/review/review.server';
 import type { Tx } from '../client';
 import { document, revision } from '../schema/library';
@@ -13,45 +14,64 @@ const FIRST_ISSUE = {
   consequence: 'safety',
 } as const;
 
+/** The librarian, who writes the demo's first issues, and the checker, who reviews them. */
+const AUTHOR = 'Priyanka Velloor';
+const REVIEWER = 'Imogen Fairlocke';
+
 /**
- * Puts a shipped document into the demo's library: written by the librarian, reviewed and issued by the checker. A
- * document that is there is left as it is, unless a start was cut off between its first steps: then they go on.
- * `fill` writes what belongs to the draft besides its body.
+ * Which of the documents of a kind are not in the demo's library yet. One that a start left half way, when it was cut
+ * off between the first steps, is among them.
  */
+export async function missingFrom(
+  people: DemoPeople,
+  kind: DocumentKind,
+  slugs: readonly string[],
+): Promise<string[]> {
+  const there = await withPractice(personOf(people, AUTHOR), (tx) =>
+    tx
+      .select({ slug: document.slug, state: revision.state })
+      .from(document)
+      .innerJoin(revision, isFirst)
+      .where(and(eq(document.practiceId, personOf(people, AUTHOR).practiceId), eq(document.kind, kind))),
+  );
+  const begun = new Map(there.map(({ slug, state }) => [slug, state]));
+  return slugs.filter((slug) => UNFINISHED.includes(begun.get(slug)));
+}
+
+const UNFINISHED: readonly (RevisionState | undefined)[] = [undefined, 'draft', 'in_review'];
+
+const isFirst = and(
+  eq(revision.practiceId, document.practiceId),
+  eq(revision.documentId, document.id),
+  eq(revision.number, 1),
+);
+
+/** Takes a shipped document through all its steps. `fill` writes what belongs to the draft besides its body. */
 export async function issueShipped(
   people: DemoPeople,
   shipped: Shipped,
-  fill: (tx: Tx, author: DemoPerson, revisionId: string) => Promise<void> = async () => undefined,
+  fill: (tx: Tx, practiceId: string, revisionId: string) => Promise<void> = async () => undefined,
 ): Promise<void> {
-  const author = personOf(people, 'Priyanka Velloor');
-  const reviewer = personOf(people, 'Imogen Fairlocke');
-  const first = await withPractice(author, async (tx) => {
+  const author = personOf(people, AUTHOR);
+  const { id, state } = await withPractice(author, async (tx) => {
     const [found] = await tx
       .select({ id: revision.id, state: revision.state })
       .from(document)
-      .innerJoin(
-        revision,
-        and(
-          eq(revision.practiceId, document.practiceId),
-          eq(revision.documentId, document.id),
-          eq(revision.number, 1),
-        ),
-      )
+      .innerJoin(revision, isFirst)
       .where(
         and(
-          eq(document.practiceId, author.practiceId),
           eq(document.kind, shipped.kind),
           eq(document.slug, shipped.slug),
+          eq(document.practiceId, author.practiceId),
         ),
       );
     if (found) return found;
     const { revisionId } = await createDraft(tx, author, { ...shipped, ...FIRST_ISSUE });
-    await fill(tx, author, revisionId);
+    await fill(tx, author.practiceId, revisionId);
     return { id: revisionId, state: 'draft' as const };
   });
-  if (first.state === 'draft') await takeStep(author, first.id, { step: 'submit' });
-  if (first.state === 'draft' || first.state === 'in_review')
-    await takeStep(reviewer, first.id, { step: 'issue' });
+  if (state === 'draft') await takeStep(author, id, { step: 'submit' });
+  await takeStep(personOf(people, REVIEWER), id, { step: 'issue' });
 }
 
 function personOf(people: DemoPeople, name: string): DemoPerson {

@@ -28,15 +28,14 @@ function ConstructionLines() {
       preserveAspectRatio="xMidYMid meet"
       aria-hidden="true"
       fill="none"
-      className="pointer-events-none absolute inset-x-0 top-0 h-full w-full stroke-ink-3 max-md:static max-md:h-160"
+      className="pointer-events-none absolute inset-x-0 top-0 h-full w-full stroke-ink-3 [&_path]:[vector-effect:non-scaling-stroke] max-md:static max-md:h-160"
       strokeDasharray="5 4"
-      vectorEffect="non-scaling-stroke"
     >
       <path d="M116 60H880V88M116 88H880V128H116Z" />
       <path d="M130 42V166M880 128l13 20h-26zM858 154h44M90 108H920" />
       <path d="M130 176V208M880 160V208M130 202H880" />
       <path d="M130 330H880M130 290C290 348 380 380 560 380S880 330 880 330" />
-      <text x="505" y="196" textAnchor="middle" fontSize="12" stroke="none" className="fill-ink-2">
+      <text x="505" y="196" textAnchor="middle" fontSize="12" stroke="none" className="fill-ink-2 max-lg:hidden">
         span
       </text>
     </svg>

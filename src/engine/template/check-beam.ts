@@ -99,7 +99,11 @@ const scopeOfLoad = (template: Template, kinds: Kinds, load: LoadTemplate): Kind
 function loadFaults(template: Template, load: LoadTemplate, path: Path): TemplateFault[] {
   if (load.repeat !== undefined && !rowsOfLoad(template, load))
     return [unknownSymbol(load.repeat, [...path, 'repeat'])];
-  if (loadSymbols(template, load).size > 0) return [];
+  const columns = rowsOfLoad(template, load)?.columns.map(({ symbol }) => symbol);
+  const symbols = [...loadSymbols(template, load)].filter((symbol) => !columns || columns.includes(symbol));
+  if (symbols.length > 0 && symbols.length === loadSymbols(template, load).size) return [];
+  if (symbols.length > 0)
+    return [{ path, code: 'mixed', message: 'Size a repeated load by the columns of its list alone.' }];
   return [{ path, code: 'no_group', message: 'Size this load by a parameter that has a load group.' }];
 }
 

@@ -4,7 +4,7 @@ import { readQuantity } from '../quantity/index';
 import type { TemplateFault } from './check-expression';
 import type { Rule, Template } from './document';
 import { defaultEi, instantiate } from './instance';
-import { instanceLoads, loadSizes } from './loads';
+import { loadOf, loadShares, loadSizes } from './loads';
 import type { Path } from './measured';
 import { judgeRules, type Known, type RuleOutcome } from './rules';
 import { allMeasured, scopeOf } from './scope';
@@ -58,10 +58,8 @@ function defaultFaults(template: Template, values: Values): TemplateFault[] {
 /** Twice the loads must be loads twice as large, or the shares of their groups could not be told apart. */
 function proportionFaults(template: Template, values: Values): TemplateFault[] {
   const ei = defaultEi(template);
-  const single = instanceLoads(template, values, ei).flatMap(({ load }) => loadSizes(load));
-  const double = instanceLoads(template, doubled(template, values), ei).flatMap(({ load }) =>
-    loadSizes(load),
-  );
+  const sizes = (of: Values) => loadShares(template, of, ei).flatMap((share) => loadSizes(loadOf(share)));
+  const [single, double] = [sizes(values), sizes(doubled(template, values))];
   const isProportional = single.every(
     (size, index) => Math.abs((double[index] ?? 0) - 2 * size) <= 1e-12 * Math.abs(size),
   );

@@ -1,8 +1,8 @@
-import type { BeamDocument, Redundant, SegmentDocument, SupportDocument } from '../model/index';
+import type { BeamDocument, Load, Redundant, SegmentDocument, SupportDocument } from '../model/index';
 import { readQuantity } from '../quantity/index';
 import type { Template } from './document';
 import { evaluateNumber, evaluateTruth, type Scope } from './evaluate';
-import { type InstanceLoad, instanceLoads, type NamedLoad, selfWeightLoad } from './loads';
+import { loadOf, loadShares, type NamedLoad, nameOf } from './loads';
 import type { ParameterFault } from './measured';
 import { judgeRules, type RuleOutcome } from './rules';
 import { letterOf, scopeOf } from './scope';
@@ -63,26 +63,39 @@ export function instantiate(
   const rules = judgeRules(template, scope, { depth: options.depth, ga: options.ga });
   const broken = rules.filter(({ state, severity }) => state === 'broken' && severity === 'block');
   if (broken.length > 0) return { ok: false, faults: broken.map(toFault) };
-  const loads = instanceLoads(template, values, ei);
-  const beam = beamOf(template, scope, options, loads);
-  const stray = firstStray(beam);
+  const shares = loadShares(template, values, ei);
+  const beam = beamOf(template, scope, options);
+  const { selfWeight } = options;
+  const own = selfWeight === undefined ? [] : [ownWeight(selfWeight, beam.length)];
+  const loads = [...shares.map(loadOf), ...own];
+  const stray = firstStray({ ...beam, loads });
   if (stray) return { ok: false, faults: [stray] };
-  const weight = options.selfWeight;
-  const all = weight === undefined ? loads : [...loads, selfWeightLoad(weight, beam.length)];
   return {
     ok: true,
     instance: {
-      beam: { ...beam, loads: all.map(({ load }) => load) },
+      beam: { ...beam, loads },
       ei,
       scope,
       derived: Object.fromEntries(template.derived.map(({ symbol }) => [symbol, Number(scope.get(symbol))])),
       letters: beam.supports.map((_, index) => letterOf(index)),
       dimensions: dimensionsOf(template, scope),
-      loadNames: all.map(({ name }) => name),
+      loadNames: [...shares.map((share) => nameOf(template, share)), ...own.map(() => OWN_WEIGHT)],
       rules,
     },
   };
 }
+
+const OWN_WEIGHT: NamedLoad = { symbol: '', tex: 'w_{\\text{self}}', group: 'G' };
+
+/** The section's own weight over the whole beam, N/m. */
+const ownWeight = (weight: number, length: number): Load => ({
+  kind: 'line',
+  from: 0,
+  to: length,
+  w0: weight,
+  w1: weight,
+  group: OWN_WEIGHT.group,
+});
 
 /** A load given as one number belongs to its own group. */
 const byGroup = (template: Template, given: Values): Values =>
@@ -100,12 +113,7 @@ const isOn = (
   scope: Scope,
 ): boolean => part.when === undefined || evaluateTruth(part.when.tree, scope);
 
-function beamOf(
-  template: Template,
-  scope: Scope,
-  options: InstanceOptions,
-  loads: readonly InstanceLoad[],
-): Instance['beam'] {
+function beamOf(template: Template, scope: Scope, options: InstanceOptions): Omit<Instance['beam'], 'loads'> {
   const { beam } = template;
   const number = (expression: { tree: Template['beam']['length']['tree'] }) =>
     evaluateNumber(expression.tree, scope);
@@ -138,7 +146,6 @@ function beamOf(
     ...(segments ? { segments } : { ei, ga }),
     supports,
     ...(hinges && { hinges }),
-    loads: loads.map(({ load }) => load),
     redundants: options.redundants ? [...options.redundants] : redundantsOf(template, scope),
   };
 }

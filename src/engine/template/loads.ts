@@ -2,68 +2,78 @@ import type { Load } from '../model/index';
 import type { Template } from './document';
 import { evaluateNumber, evaluateTruth, type Scope, within } from './evaluate';
 import { allMeasured, groupOfRow, scopeOf, sourcesOf } from './scope';
-import type { Row, Value, Values } from './values';
+import type { Expression } from './tree';
+import { isRows, type Values } from './values';
 
+export type LoadTemplate = Template['beam']['loads'][number];
 /** What a load is called: its symbol where its size is one symbol (else ''), and that as TeX. */
 export type NamedLoad = { symbol: string; tex: string; group: string };
-export type InstanceLoad = { load: Load; name: NamedLoad };
-type LoadTemplate = Template['beam']['loads'][number];
+
+/** One load of the beam: a load of the template, of one group, in one row of the list it is repeated over. */
+export type LoadShare = {
+  template: LoadTemplate;
+  group: string;
+  /** Values for its place, and the group's share of the values for its size. */
+  place: Scope;
+  share: Scope;
+  /** Of the list it is repeated over, counted from 1. */
+  row?: number;
+};
 
 /** The beam's loads, one for each group of each load of the template and of each row it is repeated over. */
-export function instanceLoads(template: Template, values: Values, ei: number): InstanceLoad[] {
-  const whole = scopeOf(template, values, ei);
+export function loadShares(template: Template, values: Values, ei: number): LoadShare[] {
+  const place = scopeOf(template, values, ei);
   const scopes = new Map<string, Scope>();
-  const scopeFor = (group: string): Scope => {
+  const shareOf = (group: string): Scope => {
     const scope = scopes.get(group) ?? scopeOf(template, values, ei, group);
     scopes.set(group, scope);
     return scope;
   };
-  return template.beam.loads.flatMap((load) => {
-    if (load.when && !evaluateTruth(load.when.tree, whole)) return [];
-    if (load.repeat === undefined)
-      return groupsOf(template, load, values).map((group) => ({
-        load: placed(load, group, whole, scopeFor(group)),
-        name: nameOf(template, load, group),
-      }));
-    return overRows(template, load, values, whole);
+  return template.beam.loads.flatMap((load): LoadShare[] => {
+    if (load.when && !evaluateTruth(load.when.tree, place)) return [];
+    if (load.repeat !== undefined) return rowShares(template, load, values, place);
+    return groupsOf(template, load, values).map((group) => ({
+      template: load,
+      group,
+      place,
+      share: shareOf(group),
+    }));
   });
 }
 
-/** One load of its group: its place from all values, its size from the group's share of them. */
-function placed(load: LoadTemplate, group: string, place: Scope, share: Scope): Load {
-  const at = (expression: LoadTemplate['when']) => (expression ? evaluateNumber(expression.tree, place) : 0);
-  const size = (expression: LoadTemplate['when']) =>
-    expression ? evaluateNumber(expression.tree, share) : 0;
+function rowShares(template: Template, load: LoadTemplate, values: Values, whole: Scope): LoadShare[] {
+  const parameter = template.parameters.find(({ symbol }) => symbol === load.repeat);
+  const rows = values[load.repeat ?? ''] ?? [];
+  if (parameter?.kind !== 'rows' || !isRows(rows)) return [];
+  return rows.map((row, index) => {
+    const place = within(new Map(Object.entries(row)), whole);
+    return {
+      template: load,
+      group: groupOfRow(parameter.columns, row) ?? '',
+      place,
+      share: place,
+      row: index + 1,
+    };
+  });
+}
+
+/** The load in numbers. */
+export function loadOf({ template: load, group, place, share }: LoadShare): Load {
+  const at = ({ tree }: Expression) => evaluateNumber(tree, place);
+  const size = ({ tree }: Expression) => evaluateNumber(tree, share);
   switch (load.kind) {
     case 'point':
       return { kind: 'point', at: at(load.at), p: size(load.p), group };
-    case 'line':
-      return {
-        kind: 'line',
-        from: at(load.from),
-        to: at(load.to),
-        w0: size(load.w0),
-        w1: size(load.w1),
-        group,
-      };
+    case 'line': {
+      const [from, to] = [at(load.from), at(load.to)];
+      return { kind: 'line', from, to, w0: size(load.w0), w1: size(load.w1), group };
+    }
     case 'couple':
       return { kind: 'couple', at: at(load.at), m: size(load.m), group };
     case 'curvature':
       return { kind: 'curvature', from: at(load.from), to: at(load.to), kappa: size(load.kappa), group };
   }
 }
-
-function overRows(template: Template, load: LoadTemplate, values: Values, whole: Scope): InstanceLoad[] {
-  const parameter = template.parameters.find(({ symbol }) => symbol === load.repeat);
-  if (parameter?.kind !== 'rows') return [];
-  return rowsIn(values[parameter.symbol]).map((row, index) => {
-    const group = groupOfRow(parameter.columns, row) ?? '';
-    const scope = within(new Map(Object.entries(row)), whole);
-    return { load: placed(load, group, scope, scope), name: nameOf(template, load, group, index + 1) };
-  });
-}
-
-const rowsIn = (value: Value | undefined): readonly Row[] => (Array.isArray(value) ? value : []);
 
 const sizeExpressions = (load: LoadTemplate) => {
   switch (load.kind) {
@@ -88,27 +98,19 @@ export function loadSymbols(template: Template, load: LoadTemplate): Set<string>
 }
 
 function groupsOf(template: Template, load: LoadTemplate, values: Values): string[] {
-  const groups = new Set<string>();
-  for (const symbol of loadSymbols(template, load)) {
-    const value = values[symbol];
-    if (typeof value === 'object' && !Array.isArray(value))
-      for (const group of Object.keys(value)) groups.add(group);
-  }
-  return [...groups];
+  const parts = [...loadSymbols(template, load)].map((symbol) => values[symbol] ?? 0);
+  return [
+    ...new Set(parts.flatMap((part) => (typeof part === 'object' && !isRows(part) ? Object.keys(part) : []))),
+  ];
 }
 
-function nameOf(template: Template, load: LoadTemplate, group: string, row?: number): NamedLoad {
+/** What drawing and derivation call a load: P_2 is the one of the second row; groups share their letter. */
+export function nameOf(template: Template, { template: load, group, row }: LoadShare): NamedLoad {
   const [size] = sizeExpressions(load);
   const symbol = typeof size?.tree === 'string' ? size.tree : '';
   const tex = [...allMeasured(template), ...template.derived].find((one) => one.symbol === symbol)?.tex ?? '';
   return { symbol, tex: row === undefined || tex === '' ? tex : `${tex}_{${row}}`, group };
 }
-
-/** The section's own weight over the whole beam, N/m. */
-export const selfWeightLoad = (weight: number, length: number): InstanceLoad => ({
-  load: { kind: 'line', from: 0, to: length, w0: weight, w1: weight, group: 'G' },
-  name: { symbol: '', tex: 'g', group: 'G' },
-});
 
 /** The sizes of a load: what grows in proportion to it. */
 export function loadSizes(load: Load): number[] {

@@ -17,9 +17,11 @@ const INFIX: Partial<Record<Operation, number>> = {
 };
 const PREFIX: Partial<Record<Operation, string>> = { neg: '-', not: 'not ' };
 const BINDS_PREFIX = 6;
+const TIGHTEST_SUM = 4;
 
 /** The tree as text for a message: "w*L^2/8", with the fewest brackets that keep its meaning. */
 export function writeExpression(tree: Tree, tightness = 0): string {
+  if (typeof tree === 'number' && tree < 0 && tightness > TIGHTEST_SUM) return `(${tree})`;
   if (typeof tree === 'number' || typeof tree === 'string') return String(tree);
   const [operation, ...parts] = tree;
   const [first = '', second = '', third = ''] = parts;
@@ -35,7 +37,7 @@ export function writeExpression(tree: Tree, tightness = 0): string {
   const prefix = PREFIX[operation];
   if (prefix) {
     const text = prefix + writeExpression(first, BINDS_PREFIX);
-    return tightness > BINDS_PREFIX ? `(${text})` : text;
+    return tightness > TIGHTEST_SUM ? `(${text})` : text;
   }
   if (operation === 'text') return `"${String(first)}"`;
   if (operation === 'if')

@@ -9,6 +9,8 @@ const HEADERS = {
 
 const CSP = 'Content-Security-Policy';
 
+const ADDED = "style-src-attr 'unsafe-inline'; frame-ancestors 'none'";
+
 /** The policy of an answer that is no page: it loads nothing and is shown in nothing. */
 const INERT = "default-src 'none'; frame-ancestors 'none'; base-uri 'none'; form-action 'none'";
 
@@ -21,12 +23,9 @@ export function secure(response: Response, https: boolean): Response {
   for (const [name, value] of Object.entries(HEADERS)) headers.set(name, value);
   if (https) headers.set('Strict-Transport-Security', 'max-age=31536000; includeSubDomains');
   const policy = headers.get(CSP);
-  headers.set(
-    CSP,
-    policy
-      ? `${policy.replace(/;?\s*$/, ';')} style-src-attr 'unsafe-inline'; frame-ancestors 'none'`
-      : INERT,
-  );
+  if (policy) headers.set(CSP, `${policy.replace(/;?\s*$/, ';')} ${ADDED}`);
+  // Astro puts its 404 page in place of an empty answer and keeps the headers that the answer had.
+  else if (response.body !== null) headers.set(CSP, INERT);
   if (headers.get('Content-Type')?.startsWith('text/html')) {
     headers.set('Content-Type', 'text/html; charset=utf-8');
     // A page shows what its reader may see: it is kept by their browser for Back, and by nobody else.

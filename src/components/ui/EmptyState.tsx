@@ -35,7 +35,14 @@ function ConstructionLines() {
       <path d="M130 42V166M880 128l13 20h-26zM858 154h44M90 108H920" />
       <path d="M130 176V208M880 160V208M130 202H880" />
       <path d="M130 330H880M130 290C290 348 380 380 560 380S880 330 880 330" />
-      <text x="505" y="196" textAnchor="middle" fontSize="12" stroke="none" className="fill-ink-2 max-lg:hidden">
+      <text
+        x="505"
+        y="196"
+        textAnchor="middle"
+        fontSize="12"
+        stroke="none"
+        className="fill-ink-2 max-lg:hidden"
+      >
         span
       </text>
     </svg>

@@ -4,7 +4,7 @@ import { homedir } from 'node:os';
 import { join, resolve } from 'node:path';
 
 /** Where this machine's Putlog keeps its database and what it must remember. PUTLOG_HOME overrides. */
-export function homeFolder() {
+function homeFolder() {
   if (process.env.PUTLOG_HOME) return resolve(process.env.PUTLOG_HOME);
   // Not below /root: the database's own user could not reach it there.
   if (process.getuid?.() === 0) return '/var/lib/putlog';

@@ -1,6 +1,6 @@
 import { createServer } from 'node:net';
 
-export const HOST = process.env.HOST || '127.0.0.1';
+const HOST = process.env.HOST || '127.0.0.1';
 
 const listenOn = (port, host) =>
   new Promise((resolve, reject) => {

@@ -2,7 +2,7 @@ import { readFileSync } from 'node:fs';
 import { setTimeout as sleep } from 'node:timers/promises';
 
 /** Since when a process has run: with its number, an identity that is not given out twice. Null when it is gone. */
-export function startedAt(pid) {
+function startedAt(pid) {
   try {
     const stat = readFileSync(`/proc/${pid}/stat`, 'utf8');
     const fields = stat.slice(stat.lastIndexOf(')') + 2).split(' ');

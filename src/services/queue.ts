@@ -1,7 +1,7 @@
 import PgBoss from 'pg-boss';
 
 /** What runs by the clock, in UTC. */
-export const SCHEDULE = {
+const SCHEDULE = {
   'sweep-sign-ins': '7 * * * *',
   'verify-audit-chains': '23 2 * * *',
 } as const;

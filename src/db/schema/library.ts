@@ -12,13 +12,7 @@ import {
   uniqueIndex,
   uuid,
 } from 'drizzle-orm/pg-core';
-import {
-  CHANGE_CLASSES,
-  CONSEQUENCES,
-  DOCUMENT_KINDS,
-  REVISION_STATES,
-  SEVERITIES,
-} from '@/features/review/review';
+import { CHANGE_CLASSES, CONSEQUENCES, DOCUMENT_KINDS, REVISION_STATES } from '@/features/review/review';
 import { ofMember, practice } from './account';
 import { id, moment, now, oneOf, practiceId, tenantPolicy } from './tenant';
 
@@ -71,7 +65,7 @@ export const revision = pgTable(
     withdrawnAt: moment(),
     withdrawnById: uuid(),
     withdrawalReason: text(),
-    withdrawalSeverity: text({ enum: SEVERITIES }),
+    withdrawalSeverity: text({ enum: CONSEQUENCES }),
   },
   (table) => [
     primaryKey({ columns: [table.practiceId, table.id] }),

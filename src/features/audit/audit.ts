@@ -33,11 +33,7 @@ export interface ChainHead {
 export const CHAIN_START: ChainHead = { sequence: 0, hash: '0'.repeat(64) };
 
 /** The hash covers everything in the row and, through the hash before it, every row since the first. */
-export const eventHash = ({
-  hash: _,
-  at,
-  ...rest
-}: Omit<AuditEvent, 'hash'> & { readonly hash?: string }): string =>
+const eventHash = ({ hash: _, at, ...rest }: Omit<AuditEvent, 'hash'> & { readonly hash?: string }): string =>
   contentHash({ ...rest, at: at.toISOString() });
 
 /** The next event of a chain. */

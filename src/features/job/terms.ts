@@ -1,6 +1,4 @@
 /** Who sees a job: everybody in the practice, or its named people (its creator, principals and administrators always do). */
 export const JOB_ACCESS = ['practice', 'named'] as const;
-export type JobAccess = (typeof JOB_ACCESS)[number];
 
 export const JOB_STATUSES = ['open', 'closed'] as const;
-export type JobStatus = (typeof JOB_STATUSES)[number];

@@ -13,7 +13,6 @@ import {
   type DocumentKind,
   REVISION_STEPS,
   type RevisionState,
-  type Severity,
 } from './review';
 
 type Actor = Person & Tenant & { readonly personId: string };
@@ -79,7 +78,7 @@ export async function createDraft(tx: Tx, author: Actor, draft: Draft): Promise<
 
 export type StepRequest =
   | { readonly step: 'submit' | 'return' | 'issue' }
-  | { readonly step: 'withdraw'; readonly reason: string; readonly severity: Severity };
+  | { readonly step: 'withdraw'; readonly reason: string; readonly severity: Consequence };
 
 interface Moved {
   readonly id: string;

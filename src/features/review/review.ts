@@ -9,12 +9,9 @@ export type RevisionState = (typeof REVISION_STATES)[number];
 export const CHANGE_CLASSES = ['error', 'code edition', 'improvement', 'wording'] as const;
 export type ChangeClass = (typeof CHANGE_CLASSES)[number];
 
+/** How bad it is to rely on what a revision changes, or on one that was withdrawn. */
 export const CONSEQUENCES = ['safety', 'service', 'cosmetic'] as const;
 export type Consequence = (typeof CONSEQUENCES)[number];
-
-/** How bad what a withdrawn revision got wrong is: the scale of a change's consequence. */
-export const SEVERITIES = CONSEQUENCES;
-export type Severity = Consequence;
 
 interface Step {
   readonly from: readonly RevisionState[];
@@ -38,11 +35,14 @@ export const REVISION_STEPS = {
   },
 } as const satisfies Record<string, Step>;
 
-export type StepName = keyof typeof REVISION_STEPS;
-
 /** The steps that a person asks for. */
-export const PERSON_STEPS = ['submit', 'return', 'issue', 'withdraw'] as const satisfies readonly StepName[];
-export type PersonStep = (typeof PERSON_STEPS)[number];
+const PERSON_STEPS = [
+  'submit',
+  'return',
+  'issue',
+  'withdraw',
+] as const satisfies readonly (keyof typeof REVISION_STEPS)[];
+type PersonStep = (typeof PERSON_STEPS)[number];
 
 /** The steps that this person could take of this revision now: the buttons to show. */
 export function stepsFor(

@@ -1,6 +1,6 @@
 import { Sum, Wide } from '../linear/index';
 import type { Load } from '../model/index';
-import { actionsOf } from './actions';
+import { type Actions, actionsOf } from './actions';
 import type { Flexibility } from './flexibility';
 import { workOf } from './released';
 import { floorOf } from './scale';
@@ -35,7 +35,7 @@ export function solveCompatibility(
     sum.subtract(imposed[i]!);
     return sum.total().negated();
   });
-  const values = closing(flexibility, missing, { actions, released });
+  const values = closing(flexibility, missing, actions);
   return { actions, released, values, moved, gaps, imposed };
 }
 
@@ -50,21 +50,16 @@ function imposedOf({ beam, redundants }: Flexibility, moved: boolean): Wide[] {
 
 /** The redundants that make the missing movements, exactly zero where they come out as nothing but rounding. */
 function closing(
-  { mesh, factors, reactions, redundants }: Flexibility,
+  { mesh, factors, redundants }: Flexibility,
   missing: readonly Wide[],
-  { actions, released }: Pick<Superposed, 'actions' | 'released'>,
+  actions: Actions,
 ): Wide[] {
   const values = factors.solve(missing);
-  const forces: Wide[] = [];
-  const couples: Wide[] = [];
-  const listOf = (component: string) => (component === 'vertical' ? forces : couples);
-  reactions.forEach(({ component }, c) => {
-    listOf(component).push(released[c]!);
-  });
-  redundants.forEach(({ component }, i) => {
-    listOf(component).push(values[i]!);
-  });
+  const isForce = (i: number) => redundants[i]!.component === 'vertical';
+  const forces = values.filter((_, i) => isForce(i));
+  const couples = values.filter((_, i) => !isForce(i));
   const floor = floorOf(mesh, actions, forces, couples);
-  const floors = redundants.map(({ component }) => (component === 'vertical' ? floor.force : floor.couple));
-  return values.map((value, i) => (Math.abs(value.hi) > floors[i]! ? value : Wide.ZERO));
+  return values.map((value, i) =>
+    Math.abs(value.hi) > (isForce(i) ? floor.force : floor.couple) ? value : Wide.ZERO,
+  );
 }

@@ -8,7 +8,8 @@ export type Purpose =
   | 'deflection'
   | 'curvature'
   | 'spring'
-  | 'rotationalSpring';
+  | 'rotationalSpring'
+  | 'sectionSize';
 
 /** How SI numbers become figures. `value` writes the minus as U+2212 and groups thousands with a thin space. */
 export type DrawingFormat = {
@@ -23,6 +24,8 @@ export type DrawingFormat = {
     leap: number;
     snap: number;
   };
+  /** The unit of scale bars beside sections, and its length in metres. */
+  scaleBar: { unit: string; metres: number };
 };
 
 /** The figure with its unit: "83.1 kNm". */

@@ -21,12 +21,15 @@ const PURPOSE: Record<Purpose, QuantityPurpose> = {
   curvature: 'curvature',
   spring: 'spring',
   rotationalSpring: 'rotational_spring',
+  sectionSize: 'section_size',
 };
 
 const STATION = {
   metric: { unit: 'm', step: 1, nudge: 0.05, leap: 0.5, snap: 0.005 },
   us: { unit: 'ft', step: FOOT, nudge: 2 * INCH, leap: 2 * FOOT, snap: INCH / 4 },
 };
+
+const SCALE_BAR = { metric: { unit: 'mm', metres: 0.001 }, us: { unit: 'in', metres: INCH } };
 
 function formatIn(system: UnitSystemName): DrawingFormat {
   return {
@@ -41,6 +44,7 @@ function formatIn(system: UnitSystemName): DrawingFormat {
       return unit === 'ft-in' ? '' : unitText(unit);
     },
     station: STATION[system],
+    scaleBar: SCALE_BAR[system],
   };
 }
 

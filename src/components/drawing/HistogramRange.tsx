@@ -1,0 +1,172 @@
+import { type KeyboardEvent, type PointerEvent, useMemo, useRef } from 'react';
+import { hatchOf, rectangle } from './geometry/hatch';
+import { roundStep } from './geometry/scale';
+import {
+  type Bins,
+  type Cursor,
+  countsOf,
+  countWithin,
+  keyedRange,
+  movedTo,
+  type Range,
+} from './histogram/histogram';
+import { ticksPath } from './marks/paths';
+import { useWidth } from './strip/use-width';
+
+export type HistogramRangeProps = {
+  /** Every value of the column, and those of the rows that meet every range; in the unit that is shown. */
+  values: readonly number[];
+  meeting: readonly number[];
+  bins: Bins;
+  range: Range;
+  onRange: (range: Range) => void;
+  step: number;
+  /** "depth": the cursors are "Least depth" and "Greatest depth". */
+  name: string;
+  unit: string;
+  /** "in this depth": follows the count between the cursors. */
+  within: string;
+};
+
+const HEIGHT = 134;
+const BASE = 74;
+const TALLEST = 60;
+const MARGIN = 14;
+const LINE = BASE + 37;
+
+type Scale = { toX: (value: number) => number; toValue: (x: number) => number; width: number };
+
+function scaleOf({ from, to }: Bins, width: number): Scale {
+  const perUnit = (width - 2 * MARGIN) / (to - from);
+  return {
+    toX: (value) => MARGIN + (value - from) * perUnit,
+    toValue: (x) => from + (x - MARGIN) / perUnit,
+    width,
+  };
+}
+
+function Bars({
+  values,
+  meeting,
+  bins,
+  scale: { toX },
+}: Pick<HistogramRangeProps, 'values' | 'meeting' | 'bins'> & { scale: Scale }) {
+  const all = countsOf(values, bins);
+  const chosen = countsOf(meeting, bins);
+  const perRow = TALLEST / Math.max(1, ...all);
+  const box = (count: number, i: number) => {
+    const left = toX(bins.from + i * bins.bin) + 1;
+    const width = Math.max(1, toX(bins.from + (i + 1) * bins.bin) - left - 1);
+    return { left, width, top: BASE - count * perRow, height: count * perRow };
+  };
+  const outline = (counts: readonly number[]) =>
+    counts.map((count, i) => {
+      const { left, width, height } = box(count, i);
+      return count === 0 ? '' : `M${left} ${BASE}v${-height}h${width}v${height}`;
+    });
+  const hatch = chosen.map((count, i) => {
+    const { left, width, top, height } = box(count, i);
+    return count === 0 ? '' : hatchOf(rectangle(left, top, width, height), -45, 5);
+  });
+  return (
+    <>
+      <path className="medium-rule" d={outline(all).join('')} />
+      <path className="chosen-hatch" d={hatch.join('')} />
+      <path className="chosen-bar" d={outline(chosen).join('')} />
+    </>
+  );
+}
+
+function Axis({ bins, scale: { toX, width } }: { bins: Bins; scale: Scale }) {
+  const step = roundStep((44 * (bins.to - bins.from)) / (width - 2 * MARGIN));
+  const first = Math.ceil(bins.from / step);
+  const stops = Array.from({ length: Math.floor(bins.to / step) - first + 1 }, (_, i) => (first + i) * step);
+  return (
+    <>
+      <path className="thin" d={`M${MARGIN} ${BASE}H${width - MARGIN}`} />
+      <path className="fine" d={stops.map((stop) => `M${toX(stop)} ${BASE}v5`).join('')} />
+      {stops.map((stop) => (
+        <text key={stop} x={toX(stop)} y={BASE + 17} textAnchor="middle" className="axis">
+          {Number(stop.toPrecision(6))}
+        </text>
+      ))}
+    </>
+  );
+}
+
+function CursorMark({ cursor, scale, ...props }: HistogramRangeProps & { cursor: Cursor; scale: Scale }) {
+  const { range, bins, step, name, unit, onRange } = props;
+  const value = range[cursor];
+  const x = scale.toX(value);
+  const drag = (event: PointerEvent<SVGElement>) => {
+    const box = event.currentTarget.ownerSVGElement?.getBoundingClientRect();
+    if (!box || box.width === 0) return;
+    const at = ((event.clientX - box.left) * scale.width) / box.width;
+    onRange(movedTo(range, cursor, scale.toValue(at), bins, step));
+  };
+  const onKeyDown = (event: KeyboardEvent) => {
+    if (event.ctrlKey || event.metaKey || event.altKey) return;
+    const next = keyedRange(event, range, cursor, bins, step);
+    if (!next) return;
+    event.preventDefault();
+    onRange(next);
+  };
+  return (
+    <g
+      className="plumb"
+      role="slider"
+      tabIndex={0}
+      aria-label={`${cursor === 'low' ? 'Least' : 'Greatest'} ${name}`}
+      aria-valuemin={cursor === 'low' ? bins.from : range.low}
+      aria-valuemax={cursor === 'low' ? range.high : bins.to}
+      aria-valuenow={value}
+      aria-valuetext={`${value} ${unit}`}
+      onPointerDown={(event) => {
+        event.currentTarget.setPointerCapture(event.pointerId);
+        drag(event);
+      }}
+      onPointerMove={(event) => event.currentTarget.hasPointerCapture(event.pointerId) && drag(event)}
+      onKeyDown={onKeyDown}
+    >
+      <path className="plumb-line" d={`M${x} 12V${LINE}`} />
+      <path className="plumb-bob" d={`M${x - 7} 4h14v8l-7 7l-7 -7z`} />
+      {/* Each grip reaches away from the other cursor, so that both can be taken hold of where they stand close. */}
+      <rect x={cursor === 'low' ? x - 22 : x - 6} y={0} width={28} height={HEIGHT} className="grip" />
+    </g>
+  );
+}
+
+/** A column's histogram: rows that meet every range are hatched, and two cursors set the range of this one. */
+export function HistogramRange(props: HistogramRangeProps) {
+  const { values, meeting, bins, range, name, unit, within } = props;
+  const host = useRef<HTMLDivElement>(null);
+  const width = useWidth(host, 420);
+  const scale = useMemo(() => scaleOf(bins, width), [bins, width]);
+  const count = countWithin(values, range);
+  const [low, high] = [scale.toX(range.low), scale.toX(range.high)];
+  const bars = useMemo(
+    () => <Bars values={values} meeting={meeting} bins={bins} scale={scale} />,
+    [values, meeting, bins, scale],
+  );
+  return (
+    <div ref={host}>
+      <svg className="drawing" viewBox={`0 0 ${width} ${HEIGHT}`}>
+        <title>{`${name}, ${unit}: ${count} ${within}, ${meeting.length} of them meet every range`}</title>
+        {bars}
+        <Axis bins={bins} scale={scale} />
+        <path className="selection" d={`M${low} ${LINE}H${high}`} />
+        <path className="selection-tick" d={ticksPath([low, high], LINE)} />
+        <text
+          x={Math.min(Math.max((low + high) / 2, 60), width - 60)}
+          y={LINE + 18}
+          textAnchor="middle"
+          className="plumb-text"
+        >
+          {`${count} ${within}`}
+        </text>
+        <CursorMark {...props} cursor="low" scale={scale} />
+        <CursorMark {...props} cursor="high" scale={scale} />
+      </svg>
+    </div>
+  );
+}

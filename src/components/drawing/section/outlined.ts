@@ -1,0 +1,32 @@
+import { roundStep } from '../geometry/scale';
+
+/** A section as drawn: its true outline in mm, x from the left edge and y down from the top, and the table's own axis letters. */
+export type OutlinedSection = {
+  name: string;
+  outline: { path: string; width: number; height: number };
+  axes: { major: string; minor: string };
+  /** The minor axis from the left edge, mm, where it is not in the middle, as in a channel. */
+  minorAt?: number | undefined;
+};
+
+/** px per mm at which every section of a row fits its slot; all are drawn at this one scale. */
+export function commonScale(
+  sections: readonly OutlinedSection[],
+  slot: number,
+  tallest: number,
+  aside: number,
+): number {
+  const height = Math.max(...sections.map(({ outline }) => outline.height));
+  const width = Math.max(...sections.map(({ outline }) => outline.width));
+  return Math.min(tallest / height, Math.max(24, slot - aside) / width);
+}
+
+/** A scale bar of two round divisions, each at least `least` px long; `unit` is in mm. */
+export function scaleBarOf(
+  pxPerMm: number,
+  unit: number,
+  least: number,
+): { division: number; value: number } {
+  const value = roundStep(least / (pxPerMm * unit));
+  return { division: value * unit * pxPerMm, value };
+}

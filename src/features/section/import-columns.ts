@@ -1,252 +1,17 @@
 import { type DimensionName, unitFactor, unitText } from '@/engine/quantity';
-import type { TabulatedName } from '@/engine/section';
 import { cellText } from './import-cells';
-import type { ImportFault } from './import-fault';
+import { type ImportFault, isError, onColumn } from './import-fault';
+import {
+  FIELD_QUANTITY,
+  type Field,
+  fieldOf,
+  type Heading,
+  isNumberField,
+  readHeading,
+} from './import-headings';
 import type { SectionTableMeta } from './section';
 
-export type SizeName = 'h' | 'b' | 'tw' | 'tf' | 'r' | 't';
-export type NumberField = SizeName | TabulatedName;
-export type TextField = 'designation' | 'shape' | 'computed';
-export type Field = NumberField | TextField;
-
-/** Quantity of each numeric field. */
-export const FIELD_QUANTITY: Readonly<Record<NumberField, DimensionName>> = {
-  h: 'length',
-  b: 'length',
-  tw: 'length',
-  tf: 'length',
-  r: 'length',
-  t: 'length',
-  mass: 'mass_per_length',
-  area: 'area',
-  iMajor: 'second_moment',
-  iMinor: 'second_moment',
-  wElMajor: 'section_modulus',
-  wElMinor: 'section_modulus',
-  wPlMajor: 'section_modulus',
-  wPlMinor: 'section_modulus',
-  rMajor: 'length',
-  rMinor: 'length',
-  j: 'second_moment',
-  iw: 'warping',
-};
-export const isNumberField = (field: Field): field is NumberField => Object.hasOwn(FIELD_QUANTITY, field);
-
-/** Headings without their unit, in lower case, letters and digits only. */
-const NEUTRAL: Readonly<Record<Field, readonly string[]>> = {
-  designation: ['designation', 'name', 'section', 'profile', 'profil', 'size', 'bezeichnung', 'type'],
-  shape: ['shape', 'form'],
-  computed: ['computed'],
-  h: ['h', 'height', 'depth', 'hohe', 'diameter'],
-  b: ['b', 'bf', 'width', 'breite', 'flangewidth'],
-  tw: ['tw', 's', 'web', 'webthickness'],
-  tf: ['tf', 'flange', 'flangethickness'],
-  t: ['t', 'wall', 'wallthickness', 'tdes'],
-  r: ['r', 'r1', 'root', 'rootradius', 'radius'],
-  mass: [
-    'mass',
-    'm',
-    'g',
-    'weight',
-    'masspermetre',
-    'masspermeter',
-    'nominalmass',
-    'nominalweight',
-    'kgperm',
-    'plf',
-  ],
-  area: ['a', 'area', 'sectionalarea', 'areaofsection', 'crosssectionalarea'],
-  iMajor: ['imajor', 'secondmomentmajor', 'secondmomentofareamajor'],
-  iMinor: ['iminor', 'secondmomentminor', 'secondmomentofareaminor'],
-  wElMajor: ['welmajor', 'elasticmodulusmajor'],
-  wElMinor: ['welminor', 'elasticmodulusminor'],
-  wPlMajor: ['wplmajor', 'plasticmodulusmajor'],
-  wPlMinor: ['wplminor', 'plasticmodulusminor'],
-  rMajor: ['rmajor', 'radiusofgyrationmajor'],
-  rMinor: ['rminor', 'radiusofgyrationminor'],
-  j: ['j', 'it', 'torsionconstant', 'torsionalconstant'],
-  iw: ['iw', 'cw', 'warpingconstant'],
-};
-
-type Axes = NonNullable<SectionTableMeta['axes']>;
-
-/**
- * Headings whose axis or modulus letter means opposite things by region. EN: y is the strong axis, W_el and W_pl.
- * US: x is strong, S elastic, Z plastic. British before 2005: x is strong, Z elastic, S plastic.
- */
-const REGIONAL: Readonly<Record<Axes, Readonly<Record<string, NumberField>>>> = {
-  en: {
-    iy: 'iMajor',
-    iyy: 'iMajor',
-    iz: 'iMinor',
-    izz: 'iMinor',
-    wely: 'wElMajor',
-    wy: 'wElMajor',
-    welz: 'wElMinor',
-    wz: 'wElMinor',
-    wply: 'wPlMajor',
-    wplz: 'wPlMinor',
-  },
-  us: {
-    d: 'h',
-    ix: 'iMajor',
-    ixx: 'iMajor',
-    iy: 'iMinor',
-    iyy: 'iMinor',
-    sx: 'wElMajor',
-    sy: 'wElMinor',
-    zx: 'wPlMajor',
-    zy: 'wPlMinor',
-    rx: 'rMajor',
-    ry: 'rMinor',
-    w: 'mass',
-  },
-  british: {
-    d: 'h',
-    ix: 'iMajor',
-    ixx: 'iMajor',
-    iy: 'iMinor',
-    iyy: 'iMinor',
-    zx: 'wElMajor',
-    zxx: 'wElMajor',
-    zy: 'wElMinor',
-    sx: 'wPlMajor',
-    sy: 'wPlMinor',
-    rx: 'rMajor',
-    ry: 'rMinor',
-  },
-};
-
-export type Heading = { name: string; unit: string | null; factor: number };
-
-/** "I_w (10³ cm⁶)" into name, unit and multiplier. A unit also stands after a blank: "A cm2". */
-export function readHeading(heading: string): Heading {
-  const text = cellText(heading)
-    .replaceAll(/[⁻⁰¹²³⁴⁵⁶⁷⁸⁹]+/g, (run) => `^${run.normalize('NFKC').replace('\u2212', '-')}`)
-    .normalize('NFKC');
-  const bracketed = /^(.*?)\s*[([]\s*([^)\]]*)[)\]]\s*$/.exec(text);
-  const trailing = /^(.*\S)\s+(\S+)$/.exec(text);
-  const [name = text, unit] = bracketed
-    ? bracketed.slice(1)
-    : trailing && isUnit(trailing[2] ?? '')
-      ? trailing.slice(1)
-      : [text];
-  const power = unit === undefined ? null : /[x×*]?\s*10\^(-?\d+)\s*[x×*·]?/.exec(unit);
-  const bare = unit?.replace(power?.[0] ?? '', '').trim();
-  return { name, unit: bare || null, factor: 10 ** Number(power?.[1] ?? 0) };
-}
-
-const QUANTITIES = [...new Set(Object.values(FIELD_QUANTITY))];
-export const isUnit = (text: string): boolean =>
-  text !== '' && QUANTITIES.some((quantity) => unitFactor(text, quantity).ok);
-
-const plainName = (name: string) =>
-  name
-    .normalize('NFD')
-    .toLowerCase()
-    .replaceAll(/[^a-z0-9]/g, '');
-
-const NEUTRAL_BY_NAME: ReadonlyMap<string, Field> = new Map(
-  (Object.keys(NEUTRAL) as Field[]).flatMap((field) => NEUTRAL[field].map((name) => [name, field])),
-);
-
-/** The field that a heading means; 'axis' where that depends on a region that is not given. */
-function fieldOf({ name, unit }: Heading, axes: Axes | undefined): Field | 'axis' | null {
-  if (axes === 'british' && /^t$/i.test(name)) return name === 't' ? 'tw' : 'tf';
-  if (axes === 'british' && name === 'H') return 'iw';
-  const plain = plainName(name);
-  const neutral = NEUTRAL_BY_NAME.get(plain);
-  if (neutral) return neutral;
-  const isRadius = /^i/.test(name) && unit !== null && unitFactor(unit, 'length').ok;
-  if (!axes) return Object.values(REGIONAL).some((names) => Object.hasOwn(names, plain)) ? 'axis' : null;
-  const field = REGIONAL[axes][plain] ?? null;
-  if (!isRadius) return field;
-  return field === 'iMajor' ? 'rMajor' : field === 'iMinor' ? 'rMinor' : null;
-}
-
 export type Column = Heading & { index: number; heading: string; field: Field };
-
-const REQUIRED: readonly Field[] = ['designation'];
-
-/** The columns of a file, with everything that its heading lines leave open. `units`: a second line of units, if any. */
-export function readColumns(
-  headings: readonly string[],
-  units: readonly string[] | null,
-  line: number,
-  meta: Pick<SectionTableMeta, 'axes' | 'shape'>,
-): { columns: Column[]; faults: ImportFault[] } {
-  const faults: ImportFault[] = [];
-  const columns: Column[] = [];
-  const report = (
-    column: string,
-    code: ImportFault['code'],
-    severity: ImportFault['severity'],
-    message: string,
-  ) => faults.push({ line, column, code, severity, got: column, message });
-
-  for (const [index, cell] of headings.entries()) {
-    const heading = cellText(cell);
-    if (heading === '') continue;
-    const read = readHeading(heading);
-    const unit = read.unit ?? (cellText(units?.[index] ?? '') || null);
-    const field = fieldOf({ ...read, unit }, meta.axes);
-    if (field === 'axis') {
-      report(
-        heading,
-        'axis_unresolved',
-        'error',
-        `"${heading}" means opposite axes by region. Say which convention the file follows.`,
-      );
-    } else if (field === null) {
-      report(
-        heading,
-        'column_unknown',
-        'note',
-        `"${heading}" is not a column of a section table and is left out.`,
-      );
-    } else if (columns.some((column) => column.field === field)) {
-      report(
-        heading,
-        'column_repeated',
-        'error',
-        `"${heading}" is the second column for the same value. Remove one.`,
-      );
-    } else {
-      columns.push({ ...read, unit, index, heading, field });
-    }
-  }
-  for (const column of columns) {
-    if (!isNumberField(column.field)) continue;
-    const quantity = FIELD_QUANTITY[column.field];
-    if (column.unit === null) {
-      report(
-        column.heading,
-        'unit_missing',
-        'error',
-        `"${column.heading}" has no unit. Write it into the heading, for example "${column.name} (${unitText(USUAL_UNITS[quantity] ?? '')})".`,
-      );
-    } else if (!unitFactor(column.unit, quantity).ok) {
-      report(
-        column.heading,
-        'column_unit',
-        'error',
-        `"${column.unit}" is not a unit of this column. Write, for example, ${unitText(USUAL_UNITS[quantity] ?? '')}.`,
-      );
-    }
-  }
-  settleFlange(columns);
-  for (const field of REQUIRED) {
-    if (!columns.some((column) => column.field === field)) {
-      report(
-        '',
-        'column_missing',
-        'error',
-        'No column is headed as the designation. Name one "designation".',
-      );
-    }
-  }
-  return { columns, faults };
-}
 
 const USUAL_UNITS: Partial<Record<DimensionName, string>> = {
   length: 'mm',
@@ -257,9 +22,80 @@ const USUAL_UNITS: Partial<Record<DimensionName, string>> = {
   warping: 'cm6',
 };
 
+/** One heading as a column, or why it is none. */
+function readColumn(
+  read: Heading,
+  index: number,
+  heading: string,
+  axes: SectionTableMeta['axes'],
+  line: number,
+) {
+  const fault = onColumn(line, heading);
+  const field = fieldOf(read, axes);
+  if (field === 'axis') {
+    const message = `"${heading}" means opposite axes by region. Say which convention the file follows.`;
+    return fault('axis_unresolved', 'error', message);
+  }
+  if (field === null) {
+    return fault(
+      'column_unknown',
+      'note',
+      `"${heading}" is not a column of a section table and is left out.`,
+    );
+  }
+  return { ...read, index, heading, field };
+}
+
+/** What a column of numbers leaves open about its unit. */
+function unitFault({ field, unit, name, heading }: Column, line: number): ImportFault | null {
+  if (!isNumberField(field)) return null;
+  const usual = unitText(USUAL_UNITS[FIELD_QUANTITY[field]] ?? '');
+  const fault = onColumn(line, heading);
+  if (unit === null) {
+    const message = `"${heading}" has no unit. Write it into the heading, for example "${name} (${usual})".`;
+    return fault('unit_missing', 'error', message);
+  }
+  if (unitFactor(unit, FIELD_QUANTITY[field]).ok) return null;
+  return fault(
+    'column_unit',
+    'error',
+    `"${unit}" is not a unit of this column. Write, for example, ${usual}.`,
+  );
+}
+
 /** German tables head web and flange with s and t: t is the wall of a tube only where there is no web. */
-function settleFlange(columns: Column[]): void {
+function settleFlange(columns: readonly Column[]): Column[] {
   const has = (field: Field) => columns.some((column) => column.field === field);
-  const wall = columns.find((column) => column.field === 't');
-  if (wall && has('tw') && !has('tf')) wall.field = 'tf';
+  const isFlange = has('tw') && !has('tf');
+  return columns.map((column) => (isFlange && column.field === 't' ? { ...column, field: 'tf' } : column));
+}
+
+/** The columns of a file, with everything that its heading lines leave open. `units`: a second line of units, if any. */
+export function readColumns(
+  headings: readonly string[],
+  units: readonly string[] | null,
+  line: number,
+  { axes }: Pick<SectionTableMeta, 'axes'>,
+): { columns: Column[]; faults: ImportFault[] } {
+  const faults: ImportFault[] = [];
+  const found: Column[] = [];
+  for (const [index, cell] of headings.entries()) {
+    const heading = cellText(cell);
+    if (heading === '') continue;
+    const read = readHeading(heading);
+    const unit = read.unit ?? (cellText(units?.[index] ?? '') || null);
+    const column = readColumn({ ...read, unit }, index, heading, axes, line);
+    if ('code' in column) faults.push(column);
+    else if (found.some(({ field }) => field === column.field)) {
+      const message = `"${heading}" is the second column for the same value. Remove one.`;
+      faults.push(onColumn(line, heading)('column_repeated', 'error', message));
+    } else found.push(column);
+  }
+  const columns = settleFlange(found);
+  faults.push(...columns.map((column) => unitFault(column, line)).filter((fault) => fault !== null));
+  if (!columns.some(({ field }) => field === 'designation') && !faults.some(isError)) {
+    const message = 'No column is headed as the designation. Name one "designation".';
+    faults.push(onColumn(line, '')('column_missing', 'error', message));
+  }
+  return { columns, faults };
 }

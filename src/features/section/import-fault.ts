@@ -39,4 +39,21 @@ export type ImportFault = {
   message: string;
 };
 
+/** A fault of a line as a whole. */
+export const onLine = (
+  line: number,
+  code: ImportCode,
+  severity: Severity,
+  message: string,
+  got = '',
+): ImportFault => ({ line, column: '', code, severity, got, message });
+
+/** Faults of one heading. */
+export const onColumn =
+  (line: number, heading: string) =>
+  (code: ImportCode, severity: Severity, message: string): ImportFault => ({
+    ...onLine(line, code, severity, message, heading),
+    column: heading,
+  });
+
 export const isError = (fault: ImportFault): boolean => fault.severity === 'error';

@@ -17,8 +17,9 @@ import {
   widthOf,
 } from '@/engine/section';
 import { halfDigit } from './import-cells';
-import { type Column, isNumberField, type NumberField } from './import-columns';
+import type { Column } from './import-columns';
 import { type ImportFault, isError } from './import-fault';
+import { isNumberField, type NumberField } from './import-headings';
 import {
   type Line,
   lineOf,

@@ -1,7 +1,8 @@
 import { SECTION_SHAPES, type SectionShape } from '@/engine/section';
 import { cellText, type DecimalMark, hasLookAlike, isMissing, readCell } from './import-cells';
-import { type Column, FIELD_QUANTITY, type Field, isNumberField, type NumberField } from './import-columns';
+import type { Column } from './import-columns';
 import type { ImportFault } from './import-fault';
+import { FIELD_QUANTITY, type Field, isNumberField, type NumberField } from './import-headings';
 import type { SectionTableMeta } from './section';
 
 export type RowContext = { columns: readonly Column[]; mark: DecimalMark; meta: SectionTableMeta };

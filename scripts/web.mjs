@@ -15,6 +15,8 @@ const DRAIN = 20;
 
 process.env.ASTRO_NODE_AUTOSTART = 'disabled';
 const { handler } = await import('../dist/server/entry.mjs');
+// The middleware reads the settings: a wrong or missing one stops us here, not at the first request.
+await import('../dist/server/_astro-internal_middleware.mjs');
 
 const compress = compression({ threshold: 1024 });
 const files = sirv(fileURLToPath(new URL('../dist/client', import.meta.url)), {

@@ -35,7 +35,7 @@ export type TokenView = z.output<typeof TokenView>;
 const BROWSERS = [
   ['Edge', /\bEdg(?:e|A|iOS)?\//],
   ['Firefox', /\b(?:Firefox|FxiOS)\//],
-  ['Chrome', /\b(?:Chrome|CriOS)\//],
+  ['Chrome', /(?:Chrome|CriOS)\//],
   ['Safari', /\bSafari\//],
 ] as const;
 

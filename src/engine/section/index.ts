@@ -26,20 +26,16 @@ export {
   tube,
   widthOf,
 } from './dimensions';
-export {
-  type AmericanTimber,
-  type EuropeanTimber,
-  elasticStrength,
-  MATERIALS,
-  type Material,
-  MaterialListFault,
-  type MaterialSource,
-  materialFor,
-  readMaterials,
-  type Steel,
-  type StrengthBand,
-  yieldStrength,
-} from './material';
+export { elasticStrength, MATERIALS, materialFor, yieldStrength } from './material';
+export { MaterialListFault, readMaterials } from './material-list';
+export type {
+  AmericanTimber,
+  EuropeanTimber,
+  Material,
+  MaterialSource,
+  Steel,
+  StrengthBand,
+} from './material-types';
 export { type Corner, outlineCorners, outlinePath, type Rounding, roundCorners } from './outline';
 export {
   type Finding,

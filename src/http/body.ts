@@ -4,7 +4,7 @@ import { pointer } from '@/lib/pointer';
 import { read } from '@/lib/read';
 
 /** Bytes in a body. No document of ours comes near it. */
-export const BODY_LIMIT = 1_000_000;
+const BODY_LIMIT = 1_000_000;
 /** Objects and lists inside one another. A template's deepest expression has less than half of it. */
 const DEPTH_LIMIT = 64;
 
@@ -19,8 +19,8 @@ export async function readJson<S extends z.ZodType>(holder: Holder, schema: S): 
   return reading.value;
 }
 
-/** The body as JSON, for a reader that has faults of its own. Neither too deep nor with a key that means a prototype. */
-export async function readBody({ request }: Holder): Promise<unknown> {
+/** The body as JSON: neither too deep nor with a key that means a prototype. */
+async function readBody({ request }: Holder): Promise<unknown> {
   const type = request.headers.get('content-type')?.split(';', 1)[0]?.trim().toLowerCase() ?? '';
   if (type !== 'application/json' && !/^application\/[\w.-]+\+json$/.test(type))
     throw new AppError(

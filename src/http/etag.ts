@@ -1,4 +1,4 @@
-import { AppError } from '@/lib/app-error';
+import { AppError, stale } from '@/lib/app-error';
 
 /** A document's version as its entity tag. */
 export const etag = (version: number): string => `"${version}"`;
@@ -16,9 +16,3 @@ export function ifMatch({ request }: { readonly request: Request }): number {
   if (version === undefined) throw stale();
   return Number(version);
 }
-
-export const stale = (): AppError =>
-  new AppError(
-    'stale',
-    'Somebody saved this after you opened it. Read it again and compare before you save.',
-  );

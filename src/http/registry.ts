@@ -4,7 +4,7 @@ import type { Endpoint } from './endpoint';
 const files = import.meta.glob<Record<string, unknown>>('/src/pages/api/v1/**/*.ts');
 
 const METHODS = ['GET', 'POST', 'PUT', 'PATCH', 'DELETE'] as const;
-export type Method = (typeof METHODS)[number];
+type Method = (typeof METHODS)[number];
 
 export interface Route {
   /** As Astro writes it: /api/v1/templates/[slug]. */

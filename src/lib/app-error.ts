@@ -1,5 +1,5 @@
 /** Every refusal that the product can answer with, and its HTTP status. A code without a status does not compile. */
-export const STATUS = {
+const STATUS = {
   bad_json: 400,
   unauthenticated: 401,
   forbidden: 403,
@@ -64,3 +64,10 @@ export function invalid(faults: readonly Fault[]): AppError {
 /** Another practice's things, a job without access and what never was are told apart by nobody. */
 export const notFound = (what: string): AppError =>
   new AppError('not_found', `${what} was not found. Check its name, or ask for access to it.`);
+
+/** Of two people who change one document the second is told, and loses nothing. */
+export const stale = (): AppError =>
+  new AppError(
+    'stale',
+    'Somebody saved this after you opened it. Read it again and compare before you save.',
+  );

@@ -36,7 +36,7 @@ export { limitsOf, type ParameterFault, unitOf, type ValueOptions } from './meas
 export type { ChoiceParameter, Column, Parameter, QuantityParameter, RowsParameter, Severity } from './parts';
 export { type ProofCheck, type ProofResult, runProofCases } from './proof';
 export { judgeRules, type Known, purposeOf, type RuleOutcome } from './rules';
-export { letterOf, scopeOf } from './scope';
+export { letterOf, ruleKinds, scopeOf } from './scope';
 export { type Selected, select, selectorDimension, selectorName } from './select';
 export { type Expression, symbolsOf, type Tree } from './tree';
 export {

@@ -64,7 +64,7 @@ const Load = z.discriminatedUnion('kind', [
   }),
 ]);
 
-const Redundant = z.discriminatedUnion('component', [
+export const Redundant = z.discriminatedUnion('component', [
   z.strictObject({ support: z.int().min(0), component: z.literal(['vertical', 'rotation']) }),
   z.strictObject({ at: position, component: z.literal('moment') }),
 ]);

@@ -86,4 +86,6 @@ export function frameOf(mode: StripMode, width: number, length: number): Frame {
   return { ...metrics, mode, width, length, x0, x1, perMetre: (x1 - x0) / length };
 }
 
-export const xOf = (frame: Frame, metres: number): number => frame.x0 + metres * frame.perMetre;
+/** x of a station, to a hundredth of a px. */
+export const xOf = (frame: Frame, metres: number): number =>
+  Math.round((frame.x0 + metres * frame.perMetre) * 100) / 100;

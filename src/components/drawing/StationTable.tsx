@@ -1,0 +1,89 @@
+import { useMemo } from 'react';
+import type { DrawingFormat } from './format';
+import { letterAt, namedSupports, origin } from './names';
+import { QUANTITIES, type Quantity } from './signs';
+import { PURPOSE, SYMBOL, TITLE } from './strip/diagram-layout';
+import { type StationColumn, stationRows } from './strip/stations';
+import type { StripInput } from './strip/strip-layout';
+
+type Props = Pick<StripInput, 'beam' | 'solution' | 'envelopes'> & {
+  format: DrawingFormat;
+  quantities?: readonly Quantity[] | undefined;
+};
+
+function columnsOf({ solution, envelopes, quantities = QUANTITIES }: Props): StationColumn[] {
+  return quantities.flatMap((quantity): StationColumn[] => {
+    const envelope = envelopes?.[quantity];
+    if (envelope) {
+      const both = [
+        { quantity, words: 'most', curve: envelope.upper },
+        { quantity, words: 'least', curve: envelope.lower },
+      ];
+      // The screen turns slope and deflection over, so the lower curve is the one that is most there.
+      return quantity === 'slope' || quantity === 'deflection'
+        ? [
+            { quantity, words: 'most', curve: envelope.lower },
+            { quantity, words: 'least', curve: envelope.upper },
+          ]
+        : both;
+    }
+    return solution ? [{ quantity, words: '', curve: solution.diagrams[quantity] }] : [];
+  });
+}
+
+function extremesOf({ solution, envelopes, quantities = QUANTITIES }: Props): number[] {
+  return quantities.flatMap((quantity) => {
+    const peaks = envelopes?.[quantity]?.peaks.map(({ x }) => x) ?? [];
+    const extremes = solution?.extremes[quantity];
+    return [...peaks, ...(extremes ? [...extremes.max.at, ...extremes.min.at] : [])];
+  });
+}
+
+/** The diagrams as a table of stations and values, opened by "Show as table". */
+export function StationTable(props: Props) {
+  const { beam, format } = props;
+  const { columns, rows } = useMemo(() => {
+    const columns = columnsOf(props);
+    return { columns, rows: stationRows(props.beam, columns, extremesOf(props), props.format) };
+  }, [props]);
+  if (columns.length === 0) return null;
+  const names = namedSupports(beam);
+  return (
+    <details className="station-table">
+      <summary className="link">Show as table</summary>
+      <table className="schedule">
+        <caption>{`Stations are from ${origin(beam)}. Where a value jumps, left and right of the station are given.`}</caption>
+        <thead>
+          <tr>
+            <th scope="col">
+              Station
+              <small>{format.unit('length') || format.station.unit}</small>
+            </th>
+            {columns.map(({ quantity, words }) => (
+              <th key={quantity + words} scope="col" className="figure">
+                {`${TITLE[quantity]} ${SYMBOL[quantity]}${words ? `, ${words}` : ''}`}
+                <small>{format.unit(PURPOSE[quantity])}</small>
+              </th>
+            ))}
+          </tr>
+        </thead>
+        <tbody>
+          {rows.map(({ x, side, values }) => {
+            const letter = letterAt(names, x, beam.length);
+            const place = [format.value('length', x), letter, side].filter(Boolean).join(', ');
+            return (
+              <tr key={place}>
+                <th scope="row">{place}</th>
+                {values.map((value, i) => (
+                  <td key={`${columns[i]?.quantity}${columns[i]?.words}`} className="figure">
+                    {value}
+                  </td>
+                ))}
+              </tr>
+            );
+          })}
+        </tbody>
+      </table>
+    </details>
+  );
+}

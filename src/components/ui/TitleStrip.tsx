@@ -1,5 +1,6 @@
-import type { ReactNode } from 'react';
+import { type ReactNode, useId } from 'react';
 import { ActionButton, type BlockAction } from './BlockActions';
+import { Button } from './Button';
 import { type SheetStatus, StatusStamp } from './StatusStamp';
 
 interface TitleStripProps {
@@ -37,15 +38,28 @@ export function TitleStrip(props: TitleStripProps) {
           <StatusStamp status={status} word={props.statusWord} />
         </Cell>
       )}
-      {action && (
-        <div className="grid border-l border-ink max-md:flex-1 [&_:is(button,a)]:px-28 [&_:is(button,a)]:text-[1rem]">
-          <ActionButton
-            action={action.reason === undefined ? action : { ...action, onPress: undefined, form: undefined }}
-            tone="inverted"
-          />
-        </div>
-      )}
+      {action && <StripAction action={action} />}
     </section>
+  );
+}
+
+function StripAction({ action }: { action: BlockAction }) {
+  const id = useId();
+  return (
+    <div className="grid border-l border-ink max-md:flex-1 [&_:is(button,a)]:px-28 [&_:is(button,a)]:text-[1rem]">
+      {action.reason === undefined ? (
+        <ActionButton action={action} tone="inverted" />
+      ) : (
+        <>
+          <Button size="block" reasonId={id}>
+            {action.label}
+          </Button>
+          <span id={id} className="sr-only">
+            {action.reason}
+          </span>
+        </>
+      )}
+    </div>
   );
 }
 

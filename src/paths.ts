@@ -8,6 +8,15 @@ export const paths = {
   templates: '/templates',
   sections: '/sections',
   jobs: '/jobs',
+  newJob: '/jobs/new',
+  job: (number: string) => `/jobs/${encodeURIComponent(number)}`,
+  /** Where a template's page sends its values: the job is chosen there. */
+  newMemberOf: (template: string) => `/jobs/new-member?template=${encodeURIComponent(template)}`,
+  newMember: (number: string) => `/jobs/${encodeURIComponent(number)}/members/new`,
+  member: (number: string, mark: string) =>
+    `/jobs/${encodeURIComponent(number)}/members/${encodeURIComponent(mark)}`,
+  memberSheet: (number: string, mark: string) =>
+    `/jobs/${encodeURIComponent(number)}/members/${encodeURIComponent(mark)}/sheet`,
   help: '/help',
   helpPage: (page: string) => `/help/${encodeURIComponent(page)}`,
   healthz: '/healthz',
@@ -22,6 +31,11 @@ export const paths = {
     tokenById: (id: string) => `/api/v1/tokens/${encodeURIComponent(id)}`,
     openapi: '/api/v1/openapi.json',
     solve: '/api/v1/beams/solve',
+    jobs: '/api/v1/jobs',
+    job: (number: string) => `/api/v1/jobs/${encodeURIComponent(number)}`,
+    members: (number: string) => `/api/v1/jobs/${encodeURIComponent(number)}/members`,
+    member: (number: string, mark: string) =>
+      `/api/v1/jobs/${encodeURIComponent(number)}/members/${encodeURIComponent(mark)}`,
   },
 } as const;
 

@@ -8,6 +8,7 @@ const Problem = z.strictObject({
   status: z.int(),
   detail: z.string(),
   errors: z.array(z.strictObject({ pointer: z.string(), code: z.string(), message: z.string() })).min(1),
+  current: z.unknown().optional().describe('Of 412: the document as it stands now'),
 });
 
 type Json = Record<string, unknown>;

@@ -64,6 +64,7 @@ export function toProblem(error: AppError): Response {
     status: error.status,
     detail: error.message,
     errors: error.faults,
+    ...(error.current !== undefined && { current: error.current }),
   };
   return new Response(JSON.stringify(problem), {
     status: error.status,

@@ -29,6 +29,8 @@ export interface Fault {
 interface Details {
   readonly faults?: readonly Fault[];
   readonly headers?: Readonly<Record<string, string>>;
+  /** What stands there now, for whoever wrote to what was there before. */
+  readonly current?: unknown;
   readonly cause?: unknown;
 }
 
@@ -37,6 +39,7 @@ export class AppError extends Error {
   readonly code: ErrorCode;
   readonly faults: readonly Fault[];
   readonly headers: Readonly<Record<string, string>>;
+  readonly current: unknown;
 
   constructor(code: ErrorCode, message: string, details: Details = {}) {
     super(message, { cause: details.cause });
@@ -44,6 +47,7 @@ export class AppError extends Error {
     this.code = code;
     this.faults = details.faults?.length ? details.faults : [{ pointer: '', code, message }];
     this.headers = details.headers ?? {};
+    this.current = details.current;
   }
 
   get status(): number {
@@ -65,9 +69,10 @@ export function invalid(faults: readonly Fault[]): AppError {
 export const notFound = (what: string): AppError =>
   new AppError('not_found', `${what} was not found. Check its name, or ask for access to it.`);
 
-/** Of two people who change one document the second is told, and loses nothing. */
-export const stale = (): AppError =>
+/** Of two people who change one document the second is told, shown what stands there now, and loses nothing. */
+export const stale = (current?: unknown): AppError =>
   new AppError(
     'stale',
     'Somebody saved this after you opened it. Read it again and compare before you save.',
+    { current },
   );

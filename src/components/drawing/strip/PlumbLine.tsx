@@ -131,10 +131,10 @@ export function PlumbLine(props: Props) {
     <>
       {!phone && (
         <>
-          <text x={frame.width - 14} y={22} textAnchor="end" className="note">
+          <text x={frame.width - 14} y={18} textAnchor="end" className="note">
             Reading at plumb line
           </text>
-          <text x={frame.width - 14} y={41} textAnchor="end" className="plumb-text">
+          <text x={frame.width - 14} y={36} textAnchor="end" className="plumb-text">
             {text}
           </text>
         </>

@@ -16,31 +16,30 @@ function standOf({ beam, frame }: Props, at: number): { x: number; side: -1 | 1 
   return { x: xOf(frame, at) - 24, side: -1 };
 }
 
-function Value({
-  x,
-  y,
-  side,
-  text,
-  note,
-}: {
+type ValueProps = {
   x: number;
   y: number;
   side: -1 | 1;
+  width: number;
   text: string;
   note?: string | undefined;
-}) {
-  // A value wider than the gutter keeps its start in view and runs under its arrow.
-  const tooWide = side < 0 && x - textWidth(text, 13.5, 600) < 6;
-  const place = tooWide
-    ? { x: 6, textAnchor: 'start' as const }
-    : { x, textAnchor: side < 0 ? ('end' as const) : ('start' as const) };
+  /** How far down a value goes that is wider than its gutter, to clear the arrow. */
+  drop: number;
+};
+
+function Value({ x, y, side, width, text, note, drop }: ValueProps) {
+  const reach = textWidth(text, 13.5, 600);
+  const tooWide = side < 0 ? x - reach < 6 : x + reach > width - 4;
+  const edge = side < 0 ? 6 : width - 4;
+  const textAnchor = side < 0 === tooWide ? 'start' : 'end';
+  const top = tooWide ? y + drop : y;
   return (
     <>
-      <text {...place} y={y} className="reaction-value">
+      <text x={tooWide ? edge : x} y={top} textAnchor={textAnchor} className="reaction-value">
         <Rich text={text} />
       </text>
       {note && (
-        <text {...place} y={y + 16} className="note">
+        <text x={tooWide ? edge : x} y={top + 16} textAnchor={textAnchor} className="note">
           {note}
         </text>
       )}
@@ -50,7 +49,7 @@ function Value({
 
 /** Reactions in the sense in which they act on the beam, each with its value beside it. */
 export function Reactions(props: Props) {
-  const { layout, marks } = props;
+  const { layout, marks, frame } = props;
   return marks.map((mark) => {
     const { x, side } = standOf(props, mark.at);
     if (mark.kind === 'moment') {
@@ -59,7 +58,14 @@ export function Reactions(props: Props) {
           {mark.sense !== 0 && (
             <Turn x={x} y={layout.centre - 1} radius={15} clockwise={mark.sense < 0} className="reaction" />
           )}
-          <Value x={x - side * 16} y={layout.centre - 24} side={side} text={mark.text} />
+          <Value
+            x={x - side * 16}
+            y={layout.centre - 24}
+            side={side}
+            width={frame.width}
+            text={mark.text}
+            drop={0}
+          />
         </g>
       );
     }
@@ -70,25 +76,37 @@ export function Reactions(props: Props) {
         {mark.sense !== 0 && (
           <path className="reaction" d={arrowPath(x, up ? low : high, x, up ? high : low, 9, 2.4)} />
         )}
-        <Value x={x + side * 12} y={layout.bottom + 34} side={side} text={mark.text} note={mark.note} />
+        <Value
+          x={x + side * 12}
+          y={layout.bottom + 34}
+          side={side}
+          width={frame.width}
+          text={mark.text}
+          note={mark.note}
+          drop={26}
+        />
       </g>
     );
   });
 }
 
+const PER_LINE = 3;
+
+const lineHeightOf = (marks: readonly ReactionMark[]): number => (marks.some(({ note }) => note) ? 36 : 20);
+
 /** On a phone: one to three values to a line under the drawing, each after a small arrow. */
 export function ReactionLines({ frame, layout, marks }: Omit<Props, 'beam'>) {
-  const perLine = 3;
+  const lineHeight = lineHeightOf(marks);
   return (
     <>
       <path className="rule" d={`M0 ${layout.height}H${frame.width}`} />
       {marks.map((mark, i) => {
-        const line = Math.floor(i / perLine);
-        const inLine = Math.min(perLine, marks.length - line * perLine);
+        const line = Math.floor(i / PER_LINE);
+        const inLine = Math.min(PER_LINE, marks.length - line * PER_LINE);
         const width = textWidth(mark.text, 13.5, 600) + 14;
         const free = frame.width - 28 - width;
-        const x = 14 + (inLine < 2 ? 0 : ((i % perLine) / (inLine - 1)) * free);
-        const y = layout.height + 20 + line * 20;
+        const x = 14 + (inLine < 2 ? 0 : ((i % PER_LINE) / (inLine - 1)) * free);
+        const y = layout.height + 20 + line * lineHeight;
         return (
           <g key={`${mark.letter} ${mark.kind}`}>
             {mark.sense !== 0 && mark.kind === 'vertical' && (
@@ -107,6 +125,11 @@ export function ReactionLines({ frame, layout, marks }: Omit<Props, 'beam'>) {
             <text x={x + 14} y={y} className="reaction-value">
               <Rich text={mark.text} />
             </text>
+            {mark.note && (
+              <text x={x + 14} y={y + 15} className="note">
+                {mark.note}
+              </text>
+            )}
           </g>
         );
       })}

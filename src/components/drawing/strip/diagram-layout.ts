@@ -131,7 +131,7 @@ function layLabels(
 const ROOM = {
   screen: { above: 23, below: 24, bare: 12 },
   phone: { above: 21, below: 22, bare: 10 },
-  print: { above: 17, below: 19, bare: 8 },
+  print: { above: 17, below: 22, bare: 8 },
 };
 
 /** The strip's scale from what it holds; the values at zero are its baseline, which always shows. */
@@ -149,12 +149,25 @@ function ordinatesOf({ frame, side }: Context, diagram: Diagram, plotTop: number
   return { ...scale, toY: (value: number) => scale.base - up * value * scale.perUnit };
 }
 
+function notesOf({ side }: Context, { quantity, curves, notes }: Diagram, times: string | null): string[] {
+  const first = [curves.length > 1 ? null : signRule(quantity, side), times].filter((part) => part !== null);
+  return [...(first.length > 0 ? [first.join(', ')] : []), ...notes];
+}
+
+/** Tall enough for the diagram and for what the gutter has to say. */
+function heightOf(context: Context, diagram: Diagram): number {
+  const height = context.frame.heights[diagram.quantity];
+  return context.frame.mode === 'phone'
+    ? height
+    : Math.max(height, 60 + notesOf(context, diagram, '').length * 14);
+}
+
 /** One strip from y = top downward. */
 export function layDiagram(context: Context, diagram: Diagram, top: number): DiagramLayout {
   const { frame } = context;
   const { quantity, curves, peaks } = diagram;
   const plotTop = top + frame.head;
-  const bottom = plotTop + frame.heights[quantity];
+  const bottom = plotTop + heightOf(context, diagram);
   const { base, perUnit, toY } = ordinatesOf(context, diagram, plotTop, bottom);
   const toX = (metres: number) => xOf(frame, metres);
   const tolerance = perUnit > 0 ? 0.05 / perUnit : 1;
@@ -185,9 +198,7 @@ export function layDiagram(context: Context, diagram: Diagram, top: number): Dia
     .filter(({ rank }) => rank < 100)
     .map((peak): Point => [toX(peak.x), toY(peak.value)])
     .concat([...kept].filter(([, y]) => y === base));
-  const rule = curves.length > 1 ? [] : [signRule(quantity, context.side)];
-  const times =
-    quantity === 'deflection' && perUnit > 0 ? [`drawn × ${timesDrawn(perUnit, frame.perMetre)}`] : [];
-  const first = [...rule, ...times].join(', ');
-  return { ...layout, labels, dots, notes: [...(first === '' ? [] : [first]), ...diagram.notes] };
+  const times = `drawn × ${timesDrawn(perUnit, frame.perMetre)}`;
+  const notes = notesOf(context, diagram, quantity === 'deflection' && perUnit > 0 ? times : null);
+  return { ...layout, labels, dots, notes };
 }

@@ -95,7 +95,8 @@ const onPhoneLines = (beam: Beam): number =>
 type ElevationOptions = {
   depth: number;
   symbols?: Symbols | undefined;
-  reactions: boolean;
+  /** Whether reactions are given, and as ranges with a least value each. */
+  reactions: { shown: boolean; ranged: boolean };
   /** A mechanism is drawn, and needs room to move. */
   moves: boolean;
 };
@@ -114,7 +115,7 @@ export function layElevation(
   const bottom = top + tall;
   const first = bottom + roomBelow(beam) + (moves ? MECHANISM_REACH : 0) - (frame.mode === 'screen' ? 0 : 6);
   const dimensions = layDimensions(beam, symbols.lengths ?? [], frame, format, first);
-  const lines = frame.mode === 'phone' && reactions ? onPhoneLines(beam) : 0;
+  const lines = frame.mode === 'phone' && reactions.shown ? onPhoneLines(beam) : 0;
   return {
     top,
     centre: top + tall / 2,
@@ -123,7 +124,7 @@ export function layElevation(
     dimensions: dimensions.rows,
     figures: [...loads.figures.map((each) => ({ ...each, y: top + each.y })), ...dimensions.figures],
     height: dimensions.end + 14,
-    reactionHeight: lines === 0 ? 0 : 10 + lines * 20,
+    reactionHeight: lines === 0 ? 0 : 10 + lines * (reactions.ranged ? 36 : 20),
   };
 }
 

@@ -59,7 +59,7 @@ const METRICS: Record<StripMode, Metrics> = {
     depthMost: 30,
     head: 0,
     axis: 28,
-    heights: { shear: 78, moment: 90, slope: 60, deflection: 70 },
+    heights: { shear: 80, moment: 92, slope: 64, deflection: 74 },
     comb: 18,
     combStacked: 14,
     combPitch: 18,

@@ -76,7 +76,10 @@ export function layStrip(input: StripInput, frame: Frame, format: DrawingFormat)
   const elevation = layElevation(beam, frame, format, {
     depth: input.depth ?? beam.length / 22,
     symbols,
-    reactions: Boolean(input.reactions ?? input.solution),
+    reactions: {
+      shown: Boolean(input.reactions ?? input.solution),
+      ranged: input.reactions?.some(({ least }) => least !== undefined) ?? false,
+    },
     moves: input.motion !== undefined,
   });
   const from = elevation.height + elevation.reactionHeight;
@@ -85,9 +88,14 @@ export function layStrip(input: StripInput, frame: Frame, format: DrawingFormat)
   let y = from;
   for (const quantity of input.quantities) {
     const diagram = diagramOf(input, quantity, format);
-    if (diagram) diagrams.push(layDiagram({ beam, frame, format, side }, diagram, y));
-    else empty.push({ quantity, top: y });
-    y += frame.head + frame.heights[quantity];
+    if (diagram) {
+      const laid = layDiagram({ beam, frame, format, side }, diagram, y);
+      diagrams.push(laid);
+      y = laid.bottom;
+    } else {
+      empty.push({ quantity, top: y });
+      y += frame.head + frame.heights[quantity];
+    }
   }
   return { elevation, diagrams, empty, from, to: y };
 }

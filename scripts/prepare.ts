@@ -13,14 +13,18 @@ const owner = process.env['DATABASE_URL'];
 const app = process.env['APP_DATABASE_URL'];
 if (!owner) throw new Error('DATABASE_URL is not set: give the connection of the database’s owner');
 
-await migrate(owner);
-await installQueue(owner);
-if (app) await letIn(owner, app);
-if (process.argv.includes('--demo') && (await seedDemo())) {
+let hasDemo = false;
+await migrate(owner, async () => {
+  await installQueue(owner);
+  if (app) await letIn(owner, app);
+  if (process.argv.includes('--demo')) hasDemo = await seedDemo();
+});
+await closeConnection();
+if (hasDemo) console.log(signIns());
+
+function signIns(): string {
   const accounts = demoAccounts();
   const width = Math.max(...accounts.map(({ email }) => email.length));
-  console.log('Sign in to the demo practice as');
-  for (const { email, name, role } of accounts) console.log(`  ${email.padEnd(width)}  ${name}, ${role}`);
-  console.log(`with the password ${DEMO_PASSWORD}`);
+  const lines = accounts.map(({ email, name, role }) => `  ${email.padEnd(width)}  ${name}, ${role}`);
+  return ['Sign in to the demo practice as', ...lines, `with the password ${DEMO_PASSWORD}`].join('\n');
 }
-await closeConnection();

@@ -24,12 +24,15 @@ export function secure(response: Response, https: boolean): Response {
   if (https) headers.set('Strict-Transport-Security', 'max-age=31536000; includeSubDomains');
   const policy = headers.get(CSP);
   if (policy) headers.set(CSP, `${policy.replace(/;?\s*$/, ';')} ${ADDED}`);
-  // Astro puts its 404 page in place of an empty answer and keeps the headers that the answer had.
-  else if (response.body !== null) headers.set(CSP, INERT);
-  if (headers.get('Content-Type')?.startsWith('text/html')) {
+  // Astro puts its 404 page in place of an empty answer and keeps the headers that the answer had. The development
+  // server gives pages no policy: it inlines its scripts, and without a policy they run.
+  else if (response.body !== null && !(import.meta.env.DEV && isPage(headers))) headers.set(CSP, INERT);
+  if (isPage(headers)) {
     headers.set('Content-Type', 'text/html; charset=utf-8');
     // A page shows what its reader may see: it is kept by their browser for Back, and by nobody else.
     if (!headers.has('Cache-Control')) headers.set('Cache-Control', 'private, no-cache');
   }
   return response;
 }
+
+const isPage = (headers: Headers): boolean => headers.get('Content-Type')?.startsWith('text/html') ?? false;

@@ -1,5 +1,5 @@
 import { type Solution, solveBeam } from '../beam/index';
-import { readBeam } from '../model/index';
+import { checkRedundants, readBeam } from '../model/index';
 import { readQuantity } from '../quantity/index';
 import type { TemplateFault } from './check-expression';
 import type { Rule, Template } from './document';
@@ -13,8 +13,7 @@ import { isRows, readParameters, type Value, type Values } from './values';
 /** Evaluates the template: at its defaults everything must hold, and each rule's trial must break that rule. */
 export function checkTrials(template: Template): TemplateFault[] {
   const defaults = readParameters(template, {});
-  if (!defaults.ok)
-    return defaults.faults.map((fault) => ({ ...fault, path: ['parameters', ...fault.path] }));
+  if (!defaults.ok) return under(['parameters'], defaults.faults);
   return [
     ...defaultFaults(template, defaults.values),
     ...proportionFaults(template, defaults.values),
@@ -24,25 +23,38 @@ export function checkTrials(template: Template): TemplateFault[] {
 
 type Solving = { ok: true; solution: Solution } | { ok: false; faults: TemplateFault[] };
 
+const under = (prefix: Path, faults: readonly TemplateFault[]): TemplateFault[] =>
+  faults.map((fault) => ({ ...fault, path: [...prefix, ...fault.path] }));
+
 function solve(template: Template, values: Values, ei: number): Solving {
   const made = instantiate(template, values, { ei });
-  if (!made.ok)
-    return {
-      ok: false,
-      faults: made.faults.map((fault) => ({ ...fault, path: ['parameters', ...fault.path] })),
-    };
+  if (!made.ok) return { ok: false, faults: under(['parameters'], made.faults) };
   const beam = readBeam(made.instance.beam);
-  if (!beam.ok)
-    return { ok: false, faults: beam.faults.map((fault) => ({ ...fault, path: ['beam', ...fault.path] })) };
-  return { ok: true, solution: solveBeam(beam.value) };
+  if (!beam.ok) return { ok: false, faults: under(['beam'], beam.faults) };
+  const { redundants = [] } = made.instance.beam;
+  const inadmissible = checkRedundants(beam.value, redundants);
+  if (inadmissible.length > 0) return { ok: false, faults: under(['beam'], inadmissible) };
+  return { ok: true, solution: solveBeam(beam.value, redundants) };
 }
+
+/** The defaults with each named value of each choice in turn. */
+const variants = (template: Template, values: Values): Values[] =>
+  template.parameters.flatMap((parameter) =>
+    parameter.kind === 'choice'
+      ? parameter.options.map(({ value }) => ({ ...values, [parameter.symbol]: value }))
+      : [],
+  );
 
 function defaultFaults(template: Template, values: Values): TemplateFault[] {
   const ei = defaultEi(template);
   const solving = solve(template, values, ei);
   if (!solving.ok) return solving.faults;
+  const others = variants(template, values).flatMap((variant) => {
+    const other = solve(template, variant, ei);
+    return other.ok ? [] : other.faults;
+  });
   const outcomes = judgeRules(template, scopeOf(template, values, ei), { solution: solving.solution });
-  return outcomes.flatMap(({ state, severity, message }, index) =>
+  const broken = outcomes.flatMap(({ state, severity, message }, index): TemplateFault[] =>
     state === 'broken' && severity !== 'note'
       ? [
           {
@@ -53,6 +65,7 @@ function defaultFaults(template: Template, values: Values): TemplateFault[] {
         ]
       : [],
   );
+  return [...others, ...broken];
 }
 
 /** Twice the loads must be loads twice as large, or the shares of their groups could not be told apart. */
@@ -90,8 +103,7 @@ const mapCells = <In, Out>(
 
 function trialFaults(template: Template, rule: Rule, path: Path): TemplateFault[] {
   const values = readParameters(template, rule.trial.parameters);
-  if (!values.ok)
-    return values.faults.map((fault) => ({ ...fault, path: [...path, 'parameters', ...fault.path] }));
+  if (!values.ok) return under([...path, 'parameters'], values.faults);
   const ei = siOf(rule.trial.ei, 'bending_stiffness') ?? defaultEi(template);
   const depth = siOf(rule.trial.depth, 'length');
   const judged = (known: Known): RuleOutcome | undefined =>
@@ -99,7 +111,7 @@ function trialFaults(template: Template, rule: Rule, path: Path): TemplateFault[
   const early = judged({ depth });
   if (early?.state === 'broken') return [];
   const solving = solve(template, values.values, ei);
-  if (!solving.ok) return solving.faults.map((fault) => ({ ...fault, path: [...path, ...fault.path] }));
+  if (!solving.ok) return under(path, solving.faults);
   if (judged({ depth, solution: solving.solution })?.state === 'broken') return [];
   return [{ path, code: 'not_broken', message: 'The trial does not break the rule. Give values that do.' }];
 }

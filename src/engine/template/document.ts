@@ -18,6 +18,8 @@ import {
 } from './parts';
 import { type Expression, isTree } from './tree';
 
+export { SEVERITIES } from './parts';
+
 export const ARRANGEMENTS = [
   'simple-span',
   'cantilever',

@@ -231,6 +231,8 @@ describe('authoring', () => {
     [['beam', 'supports', 1, 'at'], 'a > L', 'wrong_dimension'],
     [['beam', 'loads', 0, 'w0'], 'w*L^3/8', 'wrong_dimension'],
     [['beam', 'redundants', 0, 'support'], 'C', 'unknown_support'],
+    [['beam', 'redundants', 0], { support: 'B', component: 'rotation' }, 'ineligible_redundant'],
+    [['beam', 'redundants'], [], 'wrong_count'],
     [['beam', 'dimensions', 0, 'symbol'], 'Lx', 'unknown_symbol'],
     [['parameters', 1, 'symbol'], 'L', 'duplicate'],
     [['parameters', 1, 'symbol'], 'EI', 'reserved'],

@@ -4,8 +4,10 @@ import { runProofCases } from '@/engine/template';
 import { solveDocument } from '@/features/beam/beam';
 import { solveRequest } from '@/features/beam/request';
 import { shippedTemplate, writtenTemplates } from '../../../tests/support/templates';
+import { derivationOf, toEvaluateAnswer } from './answer';
 import { type EvaluationInputs, evaluateTemplate, type TemplateEvaluation } from './evaluate';
 import { sourceText, toProofLines, toResultLines, toRuleLines } from './lines';
+import { evaluateAnswer, evaluateRequest } from './request';
 import { searchTexts, toParameterFields, toSchematic, toTemplateRow } from './template';
 
 const canopy = shippedTemplate('propped-cantilever-overhang-uniform');
@@ -111,6 +113,53 @@ describe('a template at given values', () => {
       return performance.now() - start;
     });
     expect(Math.min(...times)).toBeLessThan(8); // half a frame, at the best of 30: other processes share the machine
+  });
+});
+
+describe('the answer of the endpoint', () => {
+  test('has the contract’s shape for every template and every choice of redundant', () => {
+    for (const slug of writtenTemplates.keys()) {
+      const template = shippedTemplate(slug);
+      const own = evaluated({ parameters: {}, section: SECTION }, template);
+      for (const redundant of own.beam.degree === 1 ? own.solution.forceMethod.eligible : [undefined]) {
+        const evaluation = evaluated(
+          { parameters: {}, section: SECTION, redundants: redundant && [redundant] },
+          template,
+        );
+        const answer = toEvaluateAnswer(evaluation, 1);
+        expect(evaluateAnswer.parse(JSON.parse(JSON.stringify(answer))), slug).toEqual(
+          JSON.parse(JSON.stringify(answer)),
+        );
+        expect(answer.derivation.length).toBeGreaterThan(2);
+      }
+    }
+  });
+
+  test('derives the prop’s reaction with the template’s letters, in SI', () => {
+    const evaluation = evaluated({ parameters: { L: '6 m', a: '1.8 m', w: '5.517 kN/m' } });
+    const key = derivationOf(evaluation).find((step) => step.key);
+    expect(key?.value).toBeCloseTo(evaluation.solution.reactions[1]?.vertical ?? 0, 6);
+    const { derivation, rules, template } = toEvaluateAnswer(evaluation, 3);
+    expect(derivation.find(({ value }) => value === key?.value)?.unit).toBe('N');
+    expect(derivation.map(({ symbols }) => symbols).join(' ')).toMatch(/w.*L.*a/);
+    expect(template).toBe('propped-cantilever-overhang-uniform');
+    expect(rules.map(({ rule }) => rule)).toEqual(['overhang-length', 'tip-rises', 'small-movement']); // no depth is known
+  });
+
+  test('is asked for by the contract’s body, and by no other', () => {
+    const body = {
+      revision: 1,
+      parameters: { L: '7.2 m' },
+      ei: '2e7 Nm2',
+      redundants: [{ support: 1, component: 'vertical' }],
+      self_weight: false,
+    };
+    expect(evaluateRequest.parse(body)).toEqual(body);
+    expect(evaluateRequest.safeParse({ ...body, combinations: [] }).success).toBe(false);
+    expect(evaluateRequest.safeParse({}).success).toBe(false);
+    expect(evaluateRequest.safeParse({ parameters: {}, section: { designation: 'W12x26' } }).success).toBe(
+      false,
+    );
   });
 });
 

@@ -1,0 +1,44 @@
+import { type DerivationStep, type DisplayUnit, derive } from '@/engine/derivation';
+import { toSolveAnswer } from '@/features/beam/solve';
+import type { TemplateEvaluation } from './evaluate';
+import type { EvaluateAnswer } from './request';
+
+/** The worked derivation of an evaluation, with the template's letters. */
+export const derivationOf = ({ beam, instance }: TemplateEvaluation): DerivationStep[] =>
+  derive({
+    beam,
+    redundants: instance.beam.redundants,
+    names: { lengths: instance.dimensions, loads: instance.loadNames },
+  });
+
+/** The units of an endpoint: a step's value is SI there, whatever its TeX is written in. */
+const SI_UNITS: Record<DisplayUnit, string> = {
+  '': '',
+  m: 'm',
+  mm: 'm',
+  mrad: 'rad',
+  kN: 'N',
+  kNm: 'N·m',
+  'mm/kN': 'm/N',
+  'mm/kNm': 'm/(N·m)',
+  'mrad/kN': 'rad/N',
+  'mrad/kNm': 'rad/(N·m)',
+};
+
+/** The answer of POST /api/v1/templates/{slug}/evaluate. A rule that nothing is known for yet is left out. */
+export const toEvaluateAnswer = (evaluation: TemplateEvaluation, revision: number): EvaluateAnswer => ({
+  template: evaluation.template.slug,
+  revision,
+  beam: evaluation.instance.beam,
+  result: toSolveAnswer(evaluation),
+  derivation: derivationOf(evaluation).map(({ title, symbols, numbers, value, unit }) => ({
+    title,
+    symbols,
+    numbers,
+    value,
+    unit: SI_UNITS[unit],
+  })),
+  rules: evaluation.rules.flatMap(({ id, severity, state, message }) =>
+    state === 'unknown' ? [] : [{ rule: id, ok: state === 'holds', severity, message }],
+  ),
+});

@@ -6,6 +6,9 @@ export const paths = {
   refused: '/refused',
   account: '/account',
   templates: '/templates',
+  template: (slug: string) => `/templates/${encodeURIComponent(slug)}`,
+  templateRevision: (slug: string, number: number) =>
+    `/templates/${encodeURIComponent(slug)}/revisions/${number}`,
   sections: '/sections',
   jobs: '/jobs',
   newJob: '/jobs/new',

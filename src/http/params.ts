@@ -12,3 +12,14 @@ export function idParam(
   if (value === undefined || !UUID.test(value)) throw notFound(what);
   return value;
 }
+
+/** A count out of the path, such as a revision's number. What is no count is found nowhere (404). */
+export function numberParam(
+  params: Readonly<Record<string, string | undefined>>,
+  name: string,
+  what: string,
+): number {
+  const value = params[name] ?? '';
+  if (!/^[1-9]\d{0,8}$/.test(value)) throw notFound(what);
+  return Number(value);
+}

@@ -110,7 +110,7 @@ function watchCluster(home, cluster) {
 async function stop(code) {
   if (stopping) return;
   stopping = true;
-  if (ends.length > 0) console.log('\nStopping.');
+  if (code === 0) console.log('\nStopping.');
   for (const end of ends.reverse()) await end();
   process.exit(code);
 }

@@ -135,14 +135,18 @@ const asServer = (program, args) =>
     : run(program, args, { cwd: '/' });
 
 /** Up means: it lets us in. */
-async function answers(url) {
+const answers = (url) =>
+  ask(url, (sql) => sql`select 1`).then(
+    () => true,
+    () => false,
+  );
+
+/** One question to a server over a connection of its own. The driver is there once npm has installed it. */
+export async function ask(url, question) {
   const { default: postgres } = await import('postgres');
   const sql = postgres(url, { max: 1, connect_timeout: 5, onnotice: () => undefined });
   try {
-    await sql`select 1`;
-    return true;
-  } catch {
-    return false;
+    return await question(sql);
   } finally {
     await sql.end({ timeout: 1 });
   }

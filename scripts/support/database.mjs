@@ -1,4 +1,4 @@
-import { startCluster } from './cluster.mjs';
+import { ask, startCluster } from './cluster.mjs';
 import { runScript, Stop, step } from './command.mjs';
 import { ensureDebianPackages } from './packages.mjs';
 
@@ -6,7 +6,11 @@ const DATABASE = 'putlog';
 
 /** The server of DATABASE_URL, which names a database and its owner; without one, a cluster of our own. */
 export async function openDatabase(home) {
-  if (process.env.DATABASE_URL) return { ...urls(process.env.DATABASE_URL, home), cluster: null };
+  if (process.env.DATABASE_URL) {
+    const both = urls(process.env.DATABASE_URL, home);
+    await step('Signing in to the database of DATABASE_URL', () => requireAnswer(both.owner));
+    return { ...both, cluster: null };
+  }
   await ensureDebianPackages(['postgresql']);
   const cluster = await step('Starting PostgreSQL', () =>
     startCluster({ data: home.data, password: home.ownerPassword }),
@@ -34,16 +38,16 @@ function parse(text) {
   }
 }
 
-export async function createDatabase(serverUrl, name) {
-  const { default: postgres } = await import('postgres');
-  const sql = postgres(serverUrl, { max: 1, onnotice: () => undefined });
-  try {
+export const createDatabase = (serverUrl, name) =>
+  ask(serverUrl, async (sql) => {
     const [found] = await sql`select from pg_database where datname = ${name}`;
     if (!found) await sql`create database ${sql(name)}`;
-  } finally {
-    await sql.end();
-  }
-}
+  });
+
+const requireAnswer = (url) =>
+  ask(url, (sql) => sql`select 1`).catch((error) => {
+    throw new Stop(`The server of DATABASE_URL does not let its owner in: ${error.message || error.code}.`);
+  });
 
 /**
  * Migrations, the queue's tables, the role of web and worker, and with `demo` the demo practice where there is none

@@ -54,6 +54,9 @@ export async function ensureDebianPackages(names) {
       `Missing: ${what}. Run this, then try again:\n\n  sudo apt-get update && sudo apt-get ${install.join(' ')}`,
     );
   await step(`Installing ${what}`, () => withoutMainCluster(() => aptInstall(install)));
+  const absent = missing.filter((name) => !NEEDS[name].found());
+  if (absent.length > 0)
+    throw new Stop(`${absent.join(' and ')} was installed, but is not where Debian puts it.`);
 }
 
 async function aptInstall(install) {

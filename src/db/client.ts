@@ -8,7 +8,12 @@ export function connect(url: string, connections = 10) {
     connect_timeout: 10,
     idle_timeout: 60,
     onnotice: () => undefined,
-    connection: { application_name: 'putlog' },
+    connection: {
+      application_name: 'putlog',
+      // A statement that hangs, or a transaction that was forgotten, frees its locks by itself.
+      statement_timeout: 30_000,
+      idle_in_transaction_session_timeout: 60_000,
+    },
   });
   return { db: drizzle(sql, { casing: 'snake_case' }), sql, close: () => sql.end({ timeout: 5 }) };
 }

@@ -9,6 +9,7 @@ import {
   type MemberChecks,
   type ServiceArrangement,
 } from '@/engine/check';
+import { SingularMatrix } from '@/engine/linear';
 import {
   type Beam,
   checkRedundants,
@@ -20,6 +21,7 @@ import {
 import { isProven, proveSolution } from '@/engine/proof';
 import type { UnitSystemName } from '@/engine/quantity';
 import type { Material } from '@/engine/section';
+import { SingularStiffness } from '@/engine/stiffness';
 import {
   type Instance,
   instantiate,
@@ -82,15 +84,20 @@ const refused = (path: readonly (string | number)[], code: string, message: stri
   faults: [{ path, code, message }],
 });
 
+const inParameters = (faults: readonly ParameterFault[]): MemberReading => ({
+  ok: false,
+  faults: faults.map((fault) => ({ ...fault, path: ['parameters', ...fault.path] })),
+});
+
 /**
  * Solves and checks a member: each load group alone, all of them together, and every combination of the criteria as an
  * arrangement of its own, each proven by the second method. Pure: the browser shows while a value is dragged what the
- * server stores on saving. Refused with a fault at each parameter that is wrong, at "section" or at "redundants".
+ * server stores on saving. Refused with the path of each fault in the member's inputs.
  */
 export function evaluateMember(inputs: MemberInputs): MemberReading {
   const { template, system, criteria } = inputs;
   const values = readParameters(template, inputs.parameters);
-  if (!values.ok) return values;
+  if (!values.ok) return inParameters(values.faults);
   const resolution = inputs.section && resolveSection(inputs.section.values, inputs.section.material);
   if (resolution && !resolution.ok) return refused(['section'], 'no_strength', resolution.message);
   const section = resolution?.section ?? null;
@@ -100,16 +107,30 @@ export function evaluateMember(inputs: MemberInputs): MemberReading {
     selfWeight: inputs.ownWeight ? section?.selfWeight : undefined,
     redundants: inputs.redundants,
   });
-  if (!made.ok) return made;
+  if (!made.ok) return inParameters(made.faults);
   const { instance } = made;
   const reading = readBeam({ ...instance.beam, horizontal: 'ignore' });
-  if (!reading.ok) return { ok: false, faults: reading.faults.map((fault) => ({ ...fault, path: [] })) };
+  if (!reading.ok) return inParameters(reading.faults.map((fault) => ({ ...fault, path: [] })));
   const beam = reading.value;
   const choice = instance.beam.redundants;
   const inadmissible = choice && checkRedundants(beam, choice)[0];
   if (inadmissible) return refused(['redundants'], inadmissible.code, inadmissible.message);
-  return { ok: true, evaluation: evaluateBeam(instance, beam, section, criteria, template, system) };
+  try {
+    const evaluation = evaluateBeam(instance, beam, section, criteria, template, system);
+    const broken = evaluation.rules.filter(
+      ({ state, severity }) => state === 'broken' && severity === 'block',
+    );
+    return broken.length > 0
+      ? inParameters(broken.map(({ path, message }) => ({ path, code: 'rule_broken', message })))
+      : { ok: true, evaluation };
+  } catch (error) {
+    if (!(error instanceof SingularMatrix || error instanceof SingularStiffness)) throw error;
+    return refused(inputs.redundants ? ['redundants'] : [], 'unproven', UNSOLVABLE);
+  }
 }
+
+const UNSOLVABLE =
+  'There is no result within the digits that are carried. Look for points that almost coincide, for stiffnesses that are far apart, and for redundants that repeat one another.';
 
 function evaluateBeam(
   instance: Instance,

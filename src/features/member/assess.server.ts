@@ -1,0 +1,53 @@
+import type { UnitSystemName } from '@/engine/quantity';
+import { ENGINE_VERSION } from '@/engine/version';
+import { invalid } from '@/lib/app-error';
+import { contentHash } from '@/lib/fingerprint';
+import { pointer } from '@/lib/pointer';
+import { evaluateMember } from './evaluate';
+import type { SaveMember, TriedView } from './member';
+import type { Pins } from './pins.server';
+import { type StoredResult, toStoredResult } from './result';
+
+export type Given = Pick<SaveMember, 'parameters' | 'self_weight' | 'redundants'>;
+
+export interface Assessment extends TriedView {
+  readonly result: StoredResult;
+  readonly fingerprint: string;
+  readonly engine_version: string;
+}
+
+/** As the database gives it back: without undefined, typed arrays as lists. */
+const plain = <T>(value: T): T => JSON.parse(JSON.stringify(value));
+
+/**
+ * What the server finds for a member, with the fingerprint over everything that it follows from: inputs, the content of
+ * what is pinned, the engine's version and the result itself. 422 at the inputs for what cannot be evaluated.
+ */
+export function assessMember(pins: Pins, given: Given, system: UnitSystemName): Assessment {
+  const { template, criteria, section } = pins;
+  const reading = evaluateMember({
+    template: template.document,
+    parameters: given.parameters,
+    system,
+    section: section && { values: section.row.values, material: section.material },
+    criteria: criteria?.document ?? null,
+    ownWeight: given.self_weight,
+    redundants: given.redundants ?? undefined,
+  });
+  if (!reading.ok)
+    throw invalid(
+      reading.faults.map(({ path, code, message }) => ({ pointer: pointer(path), code, message })),
+    );
+  const result = plain(toStoredResult(reading.evaluation));
+  const content = {
+    inputs: { ...given, system, material: section?.material.id ?? null },
+    pins: {
+      template: template.sha256,
+      criteria: criteria?.sha256 ?? null,
+      section: section && { edition: section.row.sha256, values: section.row.values },
+    },
+    engine: ENGINE_VERSION,
+    result,
+  };
+  return { result, fingerprint: contentHash(plain(content)), engine_version: ENGINE_VERSION };
+}

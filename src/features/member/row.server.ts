@@ -1,0 +1,170 @@
+import { aliasedTable, and, asc, eq, gt } from 'drizzle-orm';
+import { z } from 'zod';
+import type { Tx } from '@/db/client';
+import { person } from '@/db/schema/account';
+import { member } from '@/db/schema/member';
+import { section } from '@/db/schema/section';
+import { type LibraryRevision, revisionsById } from '@/features/review/library.server';
+import { notFound } from '@/lib/app-error';
+import { type MemberItem, type MemberView, SaveMember } from './member';
+import { loadPins, newerEdition, type Pins, toPin } from './pins.server';
+import { governingOf, storedResult } from './result';
+
+const creator = aliasedTable(person, 'creator');
+const changer = aliasedTable(person, 'changer');
+const evaluator = aliasedTable(person, 'evaluator');
+
+const stored = {
+  parameters: SaveMember.shape.parameters,
+  settings: z.strictObject({
+    self_weight: z.boolean(),
+    self_weight_reason: z.string(),
+    redundants: SaveMember.shape.redundants,
+    /** Why the member was removed. */
+    reason: z.string(),
+  }),
+  result: storedResult.nullable(),
+};
+export type Settings = z.output<typeof stored.settings>;
+
+const select = (tx: Tx) =>
+  tx
+    .select({
+      member,
+      section: section.designation,
+      creator: creator.name,
+      changer: changer.name,
+      evaluator: evaluator.name,
+    })
+    .from(member)
+    .innerJoin(creator, eq(creator.id, member.createdById))
+    .innerJoin(changer, eq(changer.id, member.changedById))
+    .leftJoin(evaluator, eq(evaluator.id, member.evaluatedById))
+    .leftJoin(section, and(eq(section.practiceId, member.practiceId), eq(section.id, member.sectionId)));
+
+type Selected = Awaited<ReturnType<typeof select>>[number];
+
+const read = ({ member: row, ...people }: Selected) => ({
+  ...people,
+  ...row,
+  parameters: stored.parameters.parse(row.parameters),
+  settings: stored.settings.parse(row.settings),
+  result: stored.result.parse(row.result),
+});
+
+/** A member's row with what its documents say read, and its people by name. */
+export type MemberRow = ReturnType<typeof read>;
+
+export async function findMember(
+  tx: Tx,
+  practiceId: string,
+  jobId: string,
+  mark: string,
+): Promise<MemberRow | undefined> {
+  const [found] = await select(tx).where(
+    and(eq(member.practiceId, practiceId), eq(member.jobId, jobId), eq(member.mark, mark)),
+  );
+  return found && read(found);
+}
+
+export async function requireMember(
+  tx: Tx,
+  practiceId: string,
+  jobId: string,
+  mark: string,
+): Promise<MemberRow> {
+  const found = await findMember(tx, practiceId, jobId, mark);
+  if (!found) throw notFound('This member');
+  return found;
+}
+
+/** Members of a job by their marks, with the template that each pins. */
+export async function pageOfMembers(
+  tx: Tx,
+  practiceId: string,
+  jobId: string,
+  { after, limit }: { readonly after?: string | undefined; readonly limit: number },
+): Promise<{ rows: MemberItem[]; isLast: boolean }> {
+  const found = await select(tx)
+    .where(
+      and(
+        eq(member.practiceId, practiceId),
+        eq(member.jobId, jobId),
+        after === undefined ? undefined : gt(member.mark, after),
+      ),
+    )
+    .orderBy(asc(member.mark))
+    .limit(limit + 1);
+  const rows = found.slice(0, limit).map(read);
+  const pinned = await revisionsById(tx, practiceId, [
+    ...new Set(rows.map(({ templateRevisionId }) => templateRevisionId)),
+  ]);
+  const templates = new Map(pinned.map((one) => [one.revisionId, one]));
+  return {
+    rows: rows.map((row) => toMemberItem(row, templates.get(row.templateRevisionId))),
+    isLast: found.length <= limit,
+  };
+}
+
+function toMemberItem(row: MemberRow, template: LibraryRevision | undefined): MemberItem {
+  const governing = governingOf(row.result);
+  const findings = row.result?.kind === 'result' ? (row.result.checks?.findings ?? []) : [];
+  return {
+    mark: row.mark,
+    title: row.title,
+    template: {
+      slug: template?.slug ?? '',
+      reference: template?.reference ?? '',
+      name: template?.name ?? '',
+      revision: template?.number ?? 0,
+      state: template?.state ?? 'draft',
+    },
+    section: row.section,
+    status: row.status,
+    governing: governing && {
+      title: governing.title,
+      place: governing.place,
+      ratio: governing.ratio,
+    },
+    findings: findings.map(({ title }) => title),
+    unproven: row.result?.kind === 'fault',
+    version: row.version,
+    changed_by: row.changer,
+    changed_at: row.changedAt.toISOString(),
+  };
+}
+
+/** A member as it is read, with what it pins and what is newer by now. */
+export async function toMemberView(tx: Tx, row: MemberRow, job: string, pins?: Pins): Promise<MemberView> {
+  const { practiceId, settings } = row;
+  const { template, criteria, section } = pins ?? (await loadPins(tx, practiceId, row));
+  return {
+    job,
+    mark: row.mark,
+    title: row.title,
+    purpose: row.purpose,
+    status: row.status,
+    version: row.version,
+    template: await toPin(tx, practiceId, 'template', template),
+    parameters: row.parameters,
+    ...settings,
+    section: section && {
+      designation: section.row.values.designation,
+      table: section.row.table,
+      table_name: section.row.tableName,
+      edition: section.row.edition,
+      newer: await newerEdition(tx, practiceId, section.row),
+      material: section.material.id,
+    },
+    criteria: criteria && (await toPin(tx, practiceId, 'criteria', criteria)),
+    result: row.result,
+    fingerprint: row.fingerprint,
+    engine_version: row.engineVersion,
+    evaluated_at: row.evaluatedAt?.toISOString() ?? null,
+    evaluated_by: row.evaluator,
+    created_by: row.creator,
+    created_at: row.createdAt.toISOString(),
+    changed_by: row.changer,
+    changed_at: row.changedAt.toISOString(),
+  };
+}

@@ -5,6 +5,7 @@ import { type MomentSide, QUANTITIES, type Quantity } from './signs';
 import { DiagramStrip, EmptyStrip } from './strip/DiagramStrip';
 import { Elevation, type SidewaysRestraint } from './strip/Elevation';
 import { reactionMarks } from './strip/elevation-layout';
+import { type DrawingFault, FaultCloud } from './strip/FaultCloud';
 import { EditableFigure } from './strip/FigureText';
 import type { Figure } from './strip/figures';
 import { type Frame, frameOf, type StripMode } from './strip/frame';
@@ -15,7 +16,7 @@ import { StationAxis, stationLines } from './strip/StationAxis';
 import { layStrip, type StripInput, type StripLayout } from './strip/strip-layout';
 import { summaryOf } from './strip/summary';
 import { type PlumbControl, usePlumb, useRested } from './strip/use-plumb';
-import { useWidth } from './strip/use-width';
+import { useWidth } from './use-width';
 
 export type ElevationStripProps = Omit<StripInput, 'quantities' | 'momentSide'> &
   PlumbControl & {
@@ -29,6 +30,8 @@ export type ElevationStripProps = Omit<StripInput, 'quantities' | 'momentSide'> 
     dashed?: boolean | undefined;
     /** Why strips are empty: "Not drawn: the span is 0." */
     notDrawn?: string | undefined;
+    /** A cloud on the drawing over what stops it. */
+    fault?: DrawingFault | undefined;
     /** Left out: by the width of the place, screen or phone. */
     mode?: StripMode | undefined;
     /** Width in px before the page lives, and always in print. */
@@ -78,6 +81,17 @@ function Drawn({ input, frame, layout, height, ...props }: DrawnProps) {
       {input.motion !== undefined && (
         <MechanismMark beam={beam} frame={frame} layout={layout.elevation} motion={input.motion} />
       )}
+      {props.dashed && (
+        <text
+          x={frame.width - 14}
+          y={frame.mode === 'phone' ? layout.to + 38 : 18}
+          textAnchor="end"
+          className="note"
+        >
+          last good drawing
+        </text>
+      )}
+      {props.fault && <FaultCloud fault={props.fault} frame={frame} layout={layout.elevation} />}
       <path className="strip-rule" d={`M0 ${layout.from}H${frame.width}`} />
       {layout.diagrams.map((diagram) => (
         <DiagramStrip key={diagram.quantity} beam={beam} frame={frame} format={format} layout={diagram} />

@@ -11,7 +11,7 @@ import {
   type Range,
 } from './histogram/histogram';
 import { ticksPath } from './marks/paths';
-import { useWidth } from './strip/use-width';
+import { useWidth } from './use-width';
 
 export type HistogramRangeProps = {
   /** Every value of the column, and those of the rows that meet every range; in the unit that is shown. */

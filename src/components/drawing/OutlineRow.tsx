@@ -6,7 +6,7 @@ import { outlineLabel } from './SectionOutline';
 import { commonScale, type OutlinedSection } from './section/outlined';
 import { ScaleBar } from './section/ScaleBar';
 import { SectionFigure } from './section/SectionFigure';
-import { useWidth } from './strip/use-width';
+import { useWidth } from './use-width';
 
 const MOST = 4;
 const TALLEST = 172;

@@ -24,7 +24,7 @@ function Ground({ x, y, scale }: { x: number; y: number; scale: number }) {
   );
 }
 
-export function Pin({ x, underside: y, scale: k }: Seat) {
+function Pin({ x, underside: y, scale: k }: Seat) {
   return (
     <>
       <path className="medium on-paper" d={`M${x} ${y}l${9 * k} ${14 * k}h${-18 * k}z`} />
@@ -33,7 +33,7 @@ export function Pin({ x, underside: y, scale: k }: Seat) {
   );
 }
 
-export function Roller({ x, underside: y, scale: k }: Seat) {
+function Roller({ x, underside: y, scale: k }: Seat) {
   const wheel = { cy: y + 14.6 * k, r: 2.4 * k, className: 'thin on-paper' };
   return (
     <>
@@ -46,7 +46,7 @@ export function Roller({ x, underside: y, scale: k }: Seat) {
 }
 
 /** Elastic support: a zigzag on ground. */
-export function Zigzag({ x, underside: y, scale: k }: Seat) {
+function Zigzag({ x, underside: y, scale: k }: Seat) {
   const turns = `v${3 * k}l${6 * k} ${2.5 * k}l${-12 * k} ${4 * k}l${12 * k} ${4 * k}l${-12 * k} ${4 * k}l${6 * k} ${2.5 * k}v${3 * k}`;
   return (
     <>
@@ -57,7 +57,7 @@ export function Zigzag({ x, underside: y, scale: k }: Seat) {
 }
 
 /** Fixed: a wall face with the member built into it; inside the beam, a wall that it passes through. */
-export function Wall({ x, top, centre, underside, end, scale: k, wall }: Seat) {
+function Wall({ x, top, centre, underside, end, scale: k, wall }: Seat) {
   const reach = (underside - top) / 2 + (wall?.beyond ?? 26 * k);
   const thick = wall?.thick ?? 26 * k;
   const left = end === 'left' ? x - thick : end === 'right' ? x : x - thick / 2;
@@ -80,7 +80,7 @@ export function Wall({ x, top, centre, underside, end, scale: k, wall }: Seat) {
 }
 
 /** Guided: free to move across the member, held against turning: a wall on rollers. */
-export function Guided({ x, top, centre, underside, end, scale: k }: Seat) {
+function Guided({ x, top, centre, underside, end, scale: k }: Seat) {
   const out = end === 'left' ? -1 : 1;
   const reach = (underside - top) / 2 + 10 * k;
   const face = x + out * 9 * k;
@@ -103,7 +103,7 @@ export function Guided({ x, top, centre, underside, end, scale: k }: Seat) {
 }
 
 /** Rotational spring: a spiral from the member to a wall. */
-export function Spiral({ x, centre, end, scale: k }: Seat) {
+function Spiral({ x, centre, end, scale: k }: Seat) {
   const out = end === 'left' ? -1 : 1;
   const face = x + out * 15 * k;
   const thick = 7 * k;

@@ -4,7 +4,7 @@ import { roundStep } from '../geometry/scale';
 import { type Frame, xOf } from './frame';
 
 /** Stations of whole units, as many as leave `room` px between them. */
-export function stationsOf(
+function stationsOf(
   frame: Frame,
   format: DrawingFormat,
   room: number,

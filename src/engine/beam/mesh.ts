@@ -4,6 +4,8 @@ import type { Beam } from '../model/index';
 /** The beam cut at every point where anything starts, stops or acts. Piece k lies between points k and k + 1. */
 export type Mesh = {
   points: Float64Array;
+  /** Points that are none of the beam's own: releases within a span. */
+  cuts: readonly number[];
   index: ReadonlyMap<number, number>;
   /** Of each piece: its length, 1/EI, and 1/GA (0 where it does not shear). */
   lengths: readonly Wide[];
@@ -12,14 +14,15 @@ export type Mesh = {
 };
 
 export function meshOf(beam: Beam, releases: readonly number[] = []): Mesh {
-  const positions = new Set([0, beam.length, ...beam.hinges, ...releases]);
+  const positions = new Set([0, beam.length, ...beam.hinges]);
   for (const { at } of beam.supports) positions.add(at);
   for (const { from, to } of beam.segments) positions.add(from).add(to);
   for (const load of beam.loads) {
     if ('at' in load) positions.add(load.at);
     else positions.add(load.from).add(load.to);
   }
-  const points = Float64Array.from(positions).sort();
+  const cuts = releases.filter((x) => !positions.has(x));
+  const points = Float64Array.from([...positions, ...cuts]).sort();
   const flexible = beam.segments.map(({ to, ei, ga }) => ({
     to,
     bending: Wide.ONE.over(ei),
@@ -32,6 +35,7 @@ export function meshOf(beam: Beam, releases: readonly number[] = []): Mesh {
   });
   return {
     points,
+    cuts,
     index: new Map(Array.from(points, (x, i) => [x, i])),
     lengths: pieces.map(({ length }) => length),
     bending: pieces.map(({ bending }) => bending),

@@ -57,6 +57,7 @@ describe('propped cantilever under uniform load', () => {
     const other = solveBeam(propped, [{ at: 3, component: 'moment' }]);
     expect(other.forceMethod.values[0]).toBeCloseTo(evaluate(solution.diagrams.moment, 3)[0], 6);
     expect(other.reactions[1]!.vertical).toBeCloseTo((3 * w * L) / 8, 8);
+    expect(other.diagrams.moment.breaks).toEqual(solution.diagrams.moment.breaks);
   });
 });
 

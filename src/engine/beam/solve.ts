@@ -1,5 +1,5 @@
 import { type Beam, eligibleRedundants, type Load, type Redundant } from '../model/index';
-import { extremes, signChanges } from '../polynomial/index';
+import { extremes, signChanges, withoutBreaks } from '../polynomial/index';
 import { solveCompatibility } from './compatibility';
 import { flexibilityMatrix, flexibilityOf } from './flexibility';
 import { superpose } from './superpose';
@@ -24,7 +24,8 @@ export function prepareBeam(beam: Beam, redundants?: readonly Redundant[]): Prep
     beam,
     solve(loads = beam.loads, { movements = true } = {}) {
       const solving = solveCompatibility(flexibility, loads, movements);
-      const { reactions, diagrams } = superpose(flexibility, solving);
+      const { reactions, diagrams: cut } = superpose(flexibility, solving);
+      const diagrams = mended(cut, flexibility.mesh.cuts);
       return {
         degree: beam.degree,
         reactions,
@@ -54,6 +55,14 @@ export function prepareBeam(beam: Beam, redundants?: readonly Redundant[]): Prep
 export function solveBeam(beam: Beam, redundants?: readonly Redundant[]): Solution {
   return prepareBeam(beam, redundants).solve();
 }
+
+/** The release of a moment within a span is closed again: no break is left there. */
+const mended = ({ shear, moment, slope, deflection }: Diagrams, cuts: readonly number[]): Diagrams => ({
+  shear: withoutBreaks(shear, cuts),
+  moment: withoutBreaks(moment, cuts),
+  slope: withoutBreaks(slope, cuts),
+  deflection: withoutBreaks(deflection, cuts),
+});
 
 function extremesOf({ shear, moment, slope, deflection }: Diagrams): Extremes {
   return {

@@ -11,6 +11,7 @@ export {
   pieceCount,
   piecewise,
   scale,
+  withoutBreaks,
 } from './piecewise';
 export { rootsOfPiece } from './roots';
 export { signChanges } from './sign-changes';

@@ -11,6 +11,7 @@ import {
   pieceAt,
   piecewise,
   scale,
+  withoutBreaks,
 } from './piecewise';
 
 /** x on [0, 2], then a jump to 5 − 2(x − 2) on [2, 3]. */
@@ -47,6 +48,18 @@ test('pieceAt(p, x) is the piece at the right of a break, and the last one at th
 
 test('evaluatePiece(p, k, s) reads from the left end of the piece', () => {
   expect(evaluatePiece(p, 1, 0.5)).toBe(4);
+});
+
+test('withoutBreaks(p, positions) leaves the pieces at their left', () => {
+  const line = piecewise(
+    [0, 1, 2],
+    [
+      [0, 1],
+      [1, 1],
+    ],
+  );
+  expect(withoutBreaks(line, [1])).toEqual(piecewise([0, 2], [[0, 1]]));
+  expect(withoutBreaks(line, [])).toBe(line);
 });
 
 const coefficient = fc.integer({ min: -9, max: 9 });

@@ -69,6 +69,19 @@ export function multiply(p: Piecewise, q: Piecewise): Piecewise {
   });
 }
 
+/** p without breaks where it does not change: each piece holds on to the next break that is left. */
+export function withoutBreaks(p: Piecewise, positions: readonly number[]): Piecewise {
+  if (positions.length === 0) return p;
+  const kept = Array.from(p.breaks.subarray(0, -1), (_, k) => k).filter(
+    (k) => !positions.includes(p.breaks[k]!),
+  );
+  const breaks = [...kept.map((k) => p.breaks[k]!), p.breaks.at(-1)!];
+  return piecewise(
+    breaks,
+    kept.map((k) => coefficientsOf(p, k)),
+  );
+}
+
 /** dp/dx, piece by piece; jumps are not differentiated. */
 export function differentiate(p: Piecewise): Piecewise {
   return mapPieces(p, (a) => (a.length === 1 ? [0] : a.slice(1).map((c, j) => c * (j + 1))));

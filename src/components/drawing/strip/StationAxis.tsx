@@ -4,11 +4,7 @@ import { roundStep } from '../geometry/scale';
 import { type Frame, xOf } from './frame';
 
 /** Stations of whole units, as many as leave `room` px between them. */
-function stationsOf(
-  frame: Frame,
-  format: DrawingFormat,
-  room: number,
-): { step: number; stations: number[] } {
+function stationsOf(frame: Frame, format: DrawingFormat, room: number): { step: number; stations: number[] } {
   const unit = format.station.step;
   const step = Math.max(1, roundStep(room / (frame.perMetre * unit)));
   const count = Math.floor((frame.length / (unit * step)) * (1 + 1e-9));

@@ -1,4 +1,5 @@
 import { seedCriteria } from './criteria';
+import { seedMembers } from './members';
 import { findDemoPeople, foundDemoPractice } from './people';
 import { seedSections } from './sections';
 import { seedTemplates } from './templates';
@@ -14,5 +15,6 @@ export async function seedDemo(): Promise<boolean> {
   await seedSections(people);
   await seedCriteria(people);
   await seedTemplates(people);
+  await seedMembers(people);
   return true;
 }

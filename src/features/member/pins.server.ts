@@ -3,7 +3,6 @@ import { type Criteria, criteriaDocument } from '@/engine/check';
 import type { Material } from '@/engine/section';
 import { materialFor } from '@/engine/section';
 import type { Template } from '@/engine/template';
-import { templateDocument } from '@/engine/template/document';
 import { findRevision, type LibraryRevision, revisionsById } from '@/features/review/library.server';
 import {
   type ChosenSection,
@@ -11,6 +10,7 @@ import {
   chooseSection,
   pinnedSection,
 } from '@/features/section/choose.server';
+import { templateOf } from '@/features/template/template.server';
 import { type Fault, invalid } from '@/lib/app-error';
 import type { Pin, SaveMember } from './member';
 
@@ -39,7 +39,7 @@ class MissingPin extends Error {
 
 const asTemplate = (revision: LibraryRevision) => ({
   ...revision,
-  document: templateDocument.parse(revision.body),
+  document: templateOf(revision),
 });
 const asCriteria = (revision: LibraryRevision) => ({
   ...revision,

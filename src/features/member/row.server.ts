@@ -1,4 +1,4 @@
-import { aliasedTable, and, asc, eq, gt } from 'drizzle-orm';
+import { aliasedTable, and, asc, eq, getTableColumns, gt } from 'drizzle-orm';
 import { z } from 'zod';
 import type { Tx } from '@/db/client';
 import { person } from '@/db/schema/account';
@@ -30,7 +30,7 @@ export type Settings = z.output<typeof stored.settings>;
 const select = (tx: Tx) =>
   tx
     .select({
-      member,
+      ...getTableColumns(member),
       section: section.designation,
       creator: creator.name,
       changer: changer.name,
@@ -44,8 +44,7 @@ const select = (tx: Tx) =>
 
 type Selected = Awaited<ReturnType<typeof select>>[number];
 
-const read = ({ member: row, ...people }: Selected) => ({
-  ...people,
+const read = (row: Selected) => ({
   ...row,
   parameters: stored.parameters.parse(row.parameters),
   settings: stored.settings.parse(row.settings),

@@ -3,7 +3,15 @@ import { SUPPORT_KINDS } from '@/engine/model/index';
 import { DIMENSION_WORDS, type DimensionName, readQuantity } from '@/engine/quantity/index';
 
 /** Sizes beyond which a request is no beam of a building, and would keep others waiting. */
-export const LIMITS = { supports: 400, hinges: 400, segments: 400, loads: 2000, stations: 5001 } as const;
+export const LIMITS = {
+  supports: 400,
+  hinges: 400,
+  segments: 400,
+  loads: 2000,
+  stations: 5001,
+  /** Chosen ones: each may reach over the whole beam, so that the work grows with their cube. */
+  redundants: 120,
+} as const;
 
 /** A JSON number in SI, or what a person types, with its unit. */
 const quantity = (dimension: DimensionName) =>
@@ -78,10 +86,7 @@ export const solveRequest = z.strictObject({
   supports: z.array(Support).max(LIMITS.supports),
   hinges: z.array(position).max(LIMITS.hinges).optional(),
   loads: z.array(Load).max(LIMITS.loads).optional(),
-  redundants: z
-    .array(Redundant)
-    .max(2 * LIMITS.supports)
-    .optional(),
+  redundants: z.array(Redundant).max(LIMITS.redundants).optional(),
   stations: z.union([z.int().min(2).max(LIMITS.stations), z.array(position).max(LIMITS.stations)]).optional(),
   horizontal: z.literal('ignore').optional(),
 });

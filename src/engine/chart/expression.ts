@@ -110,6 +110,26 @@ export function evaluate(a: Expression, value: (name: string) => number): number
   }, 0);
 }
 
+/**
+ * The same with every factor written so that it is positive, and its positive monomials first: −w(a − L) as w(L − a)
+ * where a < L.
+ */
+export function oriented(a: Expression, value: (name: string) => number): Expression {
+  return a.map((term) => {
+    let coefficient = term.coefficient;
+    const factors = term.factors.map(({ sum: monomials, power: p }) => {
+      const plain = monomials.map((monomial) => ({ ...monomial, factors: [] }));
+      const isNegative = evaluate(plain, value) < 0;
+      if (isNegative && p % 2 !== 0) coefficient = product(coefficient, rational(-1));
+      const turned = isNegative ? negate(plain) : plain;
+      const positive = turned.filter((monomial) => monomial.coefficient.n > 0);
+      const rest = turned.filter((monomial) => monomial.coefficient.n < 0);
+      return { sum: [...positive, ...rest].map(({ factors: _, ...monomial }) => monomial), power: p };
+    });
+    return { ...term, coefficient, factors };
+  });
+}
+
 /** Every symbol in it. */
 export function symbolsOf(a: Expression): string[] {
   const names = a.flatMap((term) => [

@@ -125,7 +125,7 @@ const CASES = [
     'Simple span, point load P at a',
     '0 ≤ a ≤ L',
     manual('8'),
-    ['P*(L-a)*x*(L^2-(L-a)^2-x^2)/(6*L*EI)', 'P*(L-a)*(L^2-(L-a)^2-3*x^2)/(6*L*EI)'],
+    ['P*(L-a)*x*(2*a*L-a^2-x^2)/(6*L*EI)', 'P*(L-a)*(2*a*L-a^2-3*x^2)/(6*L*EI)'],
     ['P*a*(L-x)*(2*L*x-x^2-a^2)/(6*L*EI)', 'P*a*(2*L^2-6*L*x+3*x^2+a^2)/(6*L*EI)'],
   ),
   chartCase(

@@ -1,0 +1,10 @@
+export { derive } from './derive';
+export type {
+  ChartUse,
+  DerivationStep,
+  DeriveInput,
+  DisplayUnit,
+  Figure,
+  LoadName,
+  NamedLength,
+} from './types';

@@ -1,0 +1,72 @@
+import { add, type Expression, subtract, ZERO } from '../chart/index';
+import type { Letters } from './symbols';
+import type { NamedLength } from './types';
+
+/** Positions along the beam as formulas of its lengths. */
+export class Places {
+  private readonly known: { readonly x: number; readonly at: Expression; isStart: boolean }[] = [
+    { x: 0, at: ZERO, isStart: true },
+  ];
+
+  constructor(
+    private readonly letters: Letters,
+    private readonly length: number,
+    lengths: readonly NamedLength[],
+  ) {
+    this.name(lengths);
+  }
+
+  /** The position as a formula; null where it has none yet. */
+  find(x: number): Expression | null {
+    return this.known.find((place) => this.isSame(place.x, x))?.at ?? null;
+  }
+
+  /** The position of a support, a hinge or an end: its distance from the one before it gets a letter. */
+  span(x: number, before: number): Expression {
+    const found = this.known.find((place) => this.isSame(place.x, x));
+    if (found) found.isStart = true;
+    if (found) return found.at;
+    const from = this.find(before) ?? this.load(before);
+    return this.remember(x, add(from, this.letters.number('L', x - before, 'length')), true);
+  }
+
+  /** The position of anything else: its distance from the support (or the end) at its left gets a letter. */
+  load(x: number): Expression {
+    const found = this.find(x);
+    if (found) return found;
+    const starts = this.known.filter((place) => place.isStart && place.x < x);
+    const from = starts.reduce((last, place) => (place.x > last.x ? place : last));
+    return this.remember(x, add(from.at, this.letters.number('a', x - from.x, 'length')));
+  }
+
+  /** A position with a letter of its own. */
+  give(x: number, at: Expression): Expression {
+    return this.remember(x, at);
+  }
+
+  /** Follows the named lengths from the left end as far as they reach. */
+  private name(lengths: readonly NamedLength[]): void {
+    const usable = lengths.filter(
+      ({ from, to, tex }) => to > from && this.letters.add(tex, to - from, 'length') !== null,
+    );
+    for (let grown = true; grown; ) {
+      grown = false;
+      for (const { from, to, tex } of usable) {
+        const [start, end] = [this.find(from), this.find(to)];
+        const span = this.letters.define(tex, this.letters.value(tex), 'length');
+        if (start && !end) this.remember(to, add(start, span));
+        if (end && !start) this.remember(from, subtract(end, span));
+        grown ||= (start === null) !== (end === null);
+      }
+    }
+  }
+
+  private remember(x: number, at: Expression, isStart = false): Expression {
+    this.known.push({ x, at, isStart });
+    return at;
+  }
+
+  private isSame(a: number, b: number): boolean {
+    return Math.abs(a - b) <= 1e-10 * this.length;
+  }
+}

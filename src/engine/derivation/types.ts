@@ -1,0 +1,61 @@
+import type { Beam, Redundant } from '../model/index';
+
+/** The unit in which a result is shown; "" where it is a plain number or there is no single one. */
+export type DisplayUnit =
+  | ''
+  | 'm'
+  | 'mm'
+  | 'mrad'
+  | 'kN'
+  | 'kNm'
+  | 'mm/kN'
+  | 'mm/kNm'
+  | 'mrad/kN'
+  | 'mrad/kNm';
+
+/** What to draw beside a step: the released beam under the loads, under a unit value of one redundant, or the beam. */
+export type Figure =
+  | { structure: 'released' }
+  | { structure: 'unit'; redundant: number }
+  | { structure: 'built' };
+
+/** A published closed form that a step uses. */
+export type ChartUse = { id: string; title: string; source: string };
+
+/**
+ * One line of the worked derivation. `symbols` and `numbers` are TeX for maths mode and are meant to be joined by an
+ * equals sign: δ_B0 = wL⁴/8EI, then the same with numbers. What the numbers come to, in kN, m and mm, is `display`.
+ */
+export type DerivationStep = {
+  /** Unique in the derivation, e.g. "gap-B". */
+  id: string;
+  /** Plain words. */
+  title: string;
+  symbols: string;
+  /** Empty where a step has no arithmetic of its own. */
+  numbers: string;
+  /** SI; null where the step lists several. */
+  value: number | null;
+  unit: DisplayUnit;
+  /** The value in `unit`, to four figures, with the minus and the thin space of the screen. */
+  display: string;
+  /** The step that finds the redundant. */
+  key?: true;
+  /** A sentence that belongs under the step, such as which way a negative reaction acts. */
+  note?: string;
+  charts?: ChartUse[];
+  figure?: Figure;
+};
+
+/** A length of the drawing and its letter, as TeX. */
+export type NamedLength = { from: number; to: number; tex: string };
+/** A load's letter, as TeX; "" where it has none. */
+export type LoadName = { tex: string };
+
+export type DeriveInput = {
+  beam: Beam;
+  /** The beam's own choice where left out. */
+  redundants?: readonly Redundant[] | undefined;
+  /** Letters of a template instance; loads in the order of the beam's. */
+  names?: { lengths: readonly NamedLength[]; loads: readonly LoadName[] } | undefined;
+};

@@ -1,0 +1,36 @@
+import { type Solution, solveBeam } from '../beam/index';
+import type { Redundant } from '../model/index';
+import type { NamedBeam } from './named-beam';
+import { type Unknown, unknownsOf } from './unknown';
+
+/** The force method's results in the derivation's letters and senses. */
+export type Worked = {
+  beam: NamedBeam;
+  solution: Solution;
+  unknowns: Unknown[];
+  /** Against the sense of a reaction, in the sense of an internal moment. m or rad. */
+  gaps: number[];
+  /** Both in their sense. */
+  flexibility: number[][];
+  /** What the support of each redundant moves against its sense. */
+  imposed: number[];
+  values: number[];
+};
+
+export function work(beam: NamedBeam, redundants?: readonly Redundant[]): Worked {
+  const solution = solveBeam(beam.beam, redundants);
+  const { forceMethod } = solution;
+  const unknowns = unknownsOf(beam, forceMethod.redundants);
+  const against = unknowns.map(({ kind, sense }) => (kind === 'internal' ? 1 : -sense));
+  return {
+    beam,
+    solution,
+    unknowns,
+    gaps: forceMethod.gaps.map((gap, i) => gap * against[i]!),
+    flexibility: forceMethod.flexibility.map((row, i) =>
+      row.map((f, j) => f * unknowns[i]!.sense * unknowns[j]!.sense),
+    ),
+    imposed: forceMethod.imposed.map((movement, i) => movement * against[i]! + 0),
+    values: forceMethod.values.map((value, i) => value * unknowns[i]!.sense),
+  };
+}

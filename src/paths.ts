@@ -10,6 +10,8 @@ export const paths = {
   templateRevision: (slug: string, number: number) =>
     `/templates/${encodeURIComponent(slug)}/revisions/${number}`,
   sections: '/sections',
+  section: (table: string, designation: string) =>
+    `/sections/${encodeURIComponent(table)}/${encodeURIComponent(designation)}`,
   jobs: '/jobs',
   newJob: '/jobs/new',
   job: (number: string) => `/jobs/${encodeURIComponent(number)}`,
@@ -34,6 +36,7 @@ export const paths = {
     tokenById: (id: string) => `/api/v1/tokens/${encodeURIComponent(id)}`,
     openapi: '/api/v1/openapi.json',
     solve: '/api/v1/beams/solve',
+    sections: '/api/v1/sections',
     jobs: '/api/v1/jobs',
     job: (number: string) => `/api/v1/jobs/${encodeURIComponent(number)}`,
     members: (number: string) => `/api/v1/jobs/${encodeURIComponent(number)}/members`,

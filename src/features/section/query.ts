@@ -1,5 +1,12 @@
 import { z } from 'zod';
-import { designationRank, SECTION_SHAPES, type SectionShape } from '@/engine/section';
+import {
+  designationKey,
+  designationParts,
+  designationRank,
+  SECTION_SHAPES,
+  type SectionShape,
+} from '@/engine/section';
+import { similarTo } from '@/lib/similar';
 import type { SectionItem } from './section';
 
 /** What a list may be narrowed and sorted by: the short name in the query, and the field that it means. */
@@ -14,9 +21,35 @@ export const SECTION_MEASURES = {
   w_pl: 'w_pl_cm3',
   j: 'j_cm4',
   iw: 'iw_cm6',
+  tw: 'tw_mm',
+  tf: 'tf_mm',
+  r: 'r_mm',
+  r_major: 'r_major_cm',
+  r_minor: 'r_minor_cm',
 } as const;
 export type SectionMeasure = keyof typeof SECTION_MEASURES;
 export type SectionField = (typeof SECTION_MEASURES)[SectionMeasure];
+
+type Measured = Pick<SectionItem, Extract<SectionField, keyof SectionItem> | 'dimensions_mm'>;
+
+/** A field's value; of a tube tw is its wall and r its outer corner. Null where the section has none. */
+export function measureOf(item: Measured, field: SectionField): number | null {
+  const { dimensions_mm: size } = item;
+  switch (field) {
+    case 'tw_mm':
+      return size['tw'] ?? size['t'] ?? null;
+    case 'tf_mm':
+      return size['tf'] ?? null;
+    case 'r_mm':
+      return size['r'] ?? size['ro'] ?? null;
+    case 'r_major_cm':
+      return Math.sqrt(item.i_major_cm4 / item.area_cm2);
+    case 'r_minor_cm':
+      return Math.sqrt(item.i_minor_cm4 / item.area_cm2);
+    default:
+      return item[field];
+  }
+}
 
 const MEASURES = Object.keys(SECTION_MEASURES) as SectionMeasure[];
 
@@ -30,7 +63,8 @@ const SHAPE_NAMES: Readonly<Record<string, readonly SectionShape[]>> = {
   timber: ['rectangle'],
 };
 
-const emptyIsNone = (value: unknown) => (value === '' ? undefined : value);
+const emptyIsNone = (value: unknown) =>
+  typeof value === 'string' && value.trim() === '' ? undefined : value;
 const bound = z.preprocess(emptyIsNone, z.coerce.number().optional());
 const word = (most: number) => z.preprocess(emptyIsNone, z.string().trim().max(most).optional());
 
@@ -55,6 +89,10 @@ export const sectionQueryFields = {
   ),
   sort: z.preprocess(emptyIsNone, z.enum(SORTS.flatMap((name) => [name, `-${name}`])).optional()),
 };
+
+/** Where a page of a list ended: grade and value of the sort (null: it has none), key and table. */
+export const sectionPlace = z.tuple([z.int(), z.number().nullable(), z.string(), z.string()]).readonly();
+export type SectionPlace = z.output<typeof sectionPlace>;
 
 export type SectionRange = { field: SectionField; min?: number; max?: number };
 export type SectionQuery = {
@@ -99,14 +137,14 @@ function readSort(text: string | null): SectionQuery['sort'] {
   return { field: measure ? SECTION_MEASURES[measure] : 'designation', descending: text.startsWith('-') };
 }
 
-type Searchable = Pick<SectionItem, 'designation' | 'shape' | 'table' | SectionField>;
+type Searchable = Measured & Pick<SectionItem, 'designation' | 'shape' | 'table'>;
 
 /** Ranges are inclusive; a value that a table does not give meets none. */
 export function meetsQuery(item: Searchable, query: SectionQuery): boolean {
   if (query.table !== null && item.table !== query.table) return false;
   if (query.shapes !== null && !query.shapes.includes(item.shape)) return false;
   return query.ranges.every(({ field, min, max }) => {
-    const value = item[field];
+    const value = measureOf(item, field);
     return (
       value !== null &&
       value >= (min ?? Number.NEGATIVE_INFINITY) &&
@@ -115,33 +153,66 @@ export function meetsQuery(item: Searchable, query: SectionQuery): boolean {
   });
 }
 
-const byName = new Intl.Collator('en', { numeric: true });
+const compareText = (a: string, b: string): number => Number(a > b) - Number(a < b);
 
-function compareBy(a: Searchable, b: Searchable, sort: NonNullable<SectionQuery['sort']>): number {
-  const sign = sort.descending ? -1 : 1;
-  if (sort.field === 'designation') return sign * byName.compare(a.designation, b.designation);
-  const [left, right] = [a[sort.field], b[sort.field]];
+/** Family by its letters, then size by size: W4x13 stands before W12x14. */
+function compareDesignations(a: Searchable, b: Searchable): number {
+  const [left, right] = [designationParts(a.designation), designationParts(b.designation)];
+  const family = compareText(left.family, right.family);
+  if (family !== 0) return family;
+  for (const [i, size] of left.sizes.entries()) {
+    const difference = Number(size) - Number(right.sizes[i] ?? Number.NaN);
+    if (difference !== 0) return Number.isNaN(difference) ? 1 : difference;
+  }
+  return left.sizes.length - right.sizes.length || compareText(a.table, b.table);
+}
+
+function compareBy(a: Searchable, b: Searchable, { field, descending }: NonNullable<SectionQuery['sort']>) {
+  const sign = descending ? -1 : 1;
+  if (field === 'designation') return sign * compareDesignations(a, b);
+  const [left, right] = [measureOf(a, field), measureOf(b, field)];
   if (left === null || right === null) return Number(left === null) - Number(right === null);
   return sign * (left - right);
 }
 
-const LIGHTEST = { field: 'mass_kg_m', descending: false } as const;
+export const LIGHTEST = { field: 'mass_kg_m', descending: false } as const;
+
+/** Fewer letters in common than this and a designation is not offered for the one that was typed. */
+const ALIKE = 0.35;
+const OFFERED = 20;
+
+/** Of designations of which none answers what was typed, the few most like it, the most alike first. */
+export function nearestDesignations<T extends { readonly designation: string }>(
+  q: string,
+  items: readonly T[],
+): T[] {
+  const like = similarTo(designationKey(q));
+  return items
+    .map((item) => ({ item, alike: like(designationKey(item.designation)) }))
+    .filter(({ alike }) => alike >= ALIKE)
+    .sort((a, b) => b.alike - a.alike)
+    .slice(0, OFFERED)
+    .map(({ item }) => item);
+}
 
 /**
  * The items that answer a query, in its order: an exact designation first, then as sorted, else the better answer
- * before the lighter section. Ties go by designation, so that the order is always the same.
+ * before the lighter section. Ties go by designation, so that the order is always the same. Where none answers, the
+ * nearest are offered.
  */
 export function selectSections<T extends Searchable>(items: readonly T[], query: SectionQuery): T[] {
-  const ranked = items.flatMap((item) => {
+  const met = items.filter((item) => meetsQuery(item, query));
+  const ranked = met.flatMap((item) => {
     const rank = query.q === '' ? 1 : designationRank(query.q, item.designation);
-    return rank !== null && meetsQuery(item, query) ? [{ item, rank }] : [];
+    return rank === null ? [] : [{ item, rank }];
   });
+  if (ranked.length === 0) return query.q === '' ? [] : nearestDesignations(query.q, met);
   const order = (rank: number) => (query.sort ? Math.min(rank, 1) : rank);
   ranked.sort(
     (a, b) =>
       order(a.rank) - order(b.rank) ||
       compareBy(a.item, b.item, query.sort ?? LIGHTEST) ||
-      byName.compare(a.item.designation, b.item.designation),
+      compareDesignations(a.item, b.item),
   );
   return ranked.map(({ item }) => item);
 }

@@ -1,0 +1,60 @@
+import { z } from 'zod';
+import { REVISION_STATES, type RevisionState } from '@/features/review/review';
+import { type SectionItem, sectionItemSchema } from './section';
+
+/** What an edition's document says of where its rows come from. */
+export const editionDocument = z.object({
+  standard: z.string(),
+  source: z.string(),
+  conventions: z.string(),
+  licence: z.string(),
+  notes: z.array(z.string()),
+  axes: z.enum(['en', 'us', 'british']).optional(),
+  rows: z.int(),
+});
+
+/** An edition of a section table as its title block and its provenance show it. */
+export type EditionView = z.output<typeof editionDocument> & {
+  readonly table: string;
+  readonly name: string;
+  readonly reference: string;
+  readonly edition: number;
+  readonly state: RevisionState;
+  readonly by: string;
+  readonly checked: string | null;
+  readonly date: string;
+  readonly changeNote: string;
+  readonly history: readonly EditionLine[];
+};
+
+export type EditionLine = {
+  readonly edition: number;
+  readonly date: string;
+  readonly by: string;
+  readonly checked: string | null;
+  readonly change: string;
+};
+
+export type SectionDetail = { readonly item: SectionItem; readonly edition: EditionView };
+
+/** One section as the endpoint gives it: the item, and where its table comes from. */
+export const sectionView = sectionItemSchema.extend({
+  source: z.strictObject({
+    name: z.string(),
+    reference: z.string(),
+    status: z.enum(REVISION_STATES),
+    standard: z.string(),
+    source: z.string(),
+    conventions: z.string(),
+    licence: z.string(),
+    notes: z.array(z.string()),
+  }),
+});
+
+export const toSectionView = ({ item, edition }: SectionDetail): z.output<typeof sectionView> => {
+  const { name, reference, state, standard, source, conventions, licence, notes } = edition;
+  return {
+    ...item,
+    source: { name, reference, status: state, standard, source, conventions, licence, notes },
+  };
+};

@@ -1,0 +1,159 @@
+import { and, count, desc, eq, ne } from 'drizzle-orm';
+import { job } from '@/db/schema/job';
+import { revision } from '@/db/schema/library';
+import { member } from '@/db/schema/member';
+import { section } from '@/db/schema/section';
+import { withPractice } from '@/db/tenancy';
+import { designationKey } from '@/engine/section';
+import type { User } from '@/features/account/account';
+import { requirePermission } from '@/features/account/permission';
+import {
+  currentRevisions,
+  findRevision,
+  historyOf,
+  type LibraryRevision,
+} from '@/features/review/library.server';
+import { notFound } from '@/lib/app-error';
+import { type EditionView, editionDocument, type SectionDetail } from './edition';
+import type { SectionPlace, SectionQuery } from './query';
+import { type Found, searchRows, selectRows, toItem } from './search.server';
+
+const SECTION_TABLE = 'section-table';
+
+/** Sections of the issued editions, a page at a time. */
+export function searchSections(
+  user: User,
+  query: SectionQuery,
+  page: { readonly place: SectionPlace | null; readonly limit: number },
+): Promise<Found> {
+  requirePermission(user, 'library.read');
+  return withPractice(user, (tx) => searchRows(tx, user.practiceId, query, page));
+}
+
+export interface SectionKey {
+  readonly table: string;
+  /** However typed. */
+  readonly designation: string;
+  /** Without it the issued edition, else the newest. */
+  readonly edition?: number | undefined;
+}
+
+/** One section of one edition, with what the table does not show; 404 where there is none. */
+export function findSection(user: User, key: SectionKey): Promise<SectionDetail> {
+  requirePermission(user, 'library.read');
+  return withPractice(user, async (tx) => {
+    const found = await findRevision(tx, user.practiceId, {
+      kind: SECTION_TABLE,
+      slug: key.table,
+      number: key.edition,
+    });
+    if (!found) throw notFound('This section table');
+    const [row] = await selectRows(tx, {})
+      .where(
+        and(
+          eq(section.practiceId, user.practiceId),
+          eq(section.revisionId, found.revisionId),
+          eq(section.designationKey, designationKey(key.designation)),
+        ),
+      )
+      .limit(1);
+    if (!row) throw notFound('This section');
+    const history = await historyOf(tx, user.practiceId, found.documentId);
+    return { item: toItem(row), edition: toEditionView(found, history) };
+  });
+}
+
+const DAY = new Intl.DateTimeFormat('en-GB', {
+  day: 'numeric',
+  month: 'short',
+  year: 'numeric',
+  timeZone: 'UTC',
+});
+
+const toEditionView = (found: LibraryRevision, history: readonly LibraryRevision[]): EditionView => ({
+  ...editionDocument.parse(found.body),
+  table: found.slug,
+  name: found.name,
+  reference: found.reference,
+  edition: found.number,
+  state: found.state,
+  by: found.author,
+  checked: found.reviewer,
+  date: DAY.format(found.date),
+  changeNote: found.changeNote,
+  history: history.map((one) => ({
+    edition: one.number,
+    date: DAY.format(one.date),
+    by: one.author,
+    checked: one.reviewer,
+    change: one.changeNote,
+  })),
+});
+
+/** Every table by the edition that stands for it, for title blocks and the choice of a table. */
+export function listEditions(user: User): Promise<EditionView[]> {
+  requirePermission(user, 'library.read');
+  return withPractice(user, async (tx) => {
+    const found = await currentRevisions(tx, user.practiceId, SECTION_TABLE);
+    return found.map((one) => toEditionView(one, [one]));
+  });
+}
+
+/** How many members use a section, of any edition, by table and designation; only those that are used. */
+export function usesBySection(
+  user: User,
+): Promise<{ table: string; designation: string; members: number }[]> {
+  requirePermission(user, 'library.read');
+  return withPractice(user, (tx) =>
+    tx
+      .select({ table: section.tableSlug, designation: section.designation, members: count() })
+      .from(member)
+      .innerJoin(section, and(eq(section.practiceId, member.practiceId), eq(section.id, member.sectionId)))
+      .where(and(eq(member.practiceId, user.practiceId), ne(member.status, 'removed')))
+      .groupBy(section.tableSlug, section.designation)
+      .execute(),
+  );
+}
+
+export interface SectionUse {
+  readonly job: string;
+  readonly jobName: string;
+  readonly mark: string;
+  readonly title: string;
+  readonly edition: number;
+}
+
+const SHOWN = 50;
+
+/** The members made of a section, whatever its edition, in jobs that the person may see; the last changed first. */
+export function membersOf(user: User, { table, designation }: SectionKey): Promise<SectionUse[]> {
+  requirePermission(user, 'library.read');
+  return withPractice(user, (tx) =>
+    tx
+      .select({
+        job: job.number,
+        jobName: job.name,
+        mark: member.mark,
+        title: member.title,
+        edition: revision.number,
+      })
+      .from(member)
+      .innerJoin(section, and(eq(section.practiceId, member.practiceId), eq(section.id, member.sectionId)))
+      .innerJoin(
+        revision,
+        and(eq(revision.practiceId, section.practiceId), eq(revision.id, section.revisionId)),
+      )
+      .innerJoin(job, and(eq(job.practiceId, member.practiceId), eq(job.id, member.jobId)))
+      .where(
+        and(
+          eq(member.practiceId, user.practiceId),
+          eq(section.tableSlug, table),
+          eq(section.designationKey, designationKey(designation)),
+          ne(member.status, 'removed'),
+        ),
+      )
+      .orderBy(desc(member.changedAt))
+      .limit(SHOWN)
+      .execute(),
+  );
+}

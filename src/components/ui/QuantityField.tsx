@@ -6,7 +6,7 @@ import { changeUnit, outOfRange, type QuantityEntry, type QuantityRange } from '
 import { UnitPick } from './UnitPick';
 
 export interface QuantityFieldProps {
-  symbol?: string | undefined;
+  symbol?: ReactNode;
   label: string;
   dimension: DimensionName;
   entry: QuantityEntry;

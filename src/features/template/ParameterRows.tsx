@@ -1,0 +1,129 @@
+import { useId } from 'react';
+import { Button } from '@/components/ui/Button';
+import { FieldNote } from '@/components/ui/Field';
+import { readQuantity, type UnitSystemName, unitText } from '@/engine/quantity';
+import type { Column, RowsParameter } from '@/engine/template';
+import type { FieldFaults } from './faults';
+import type { LoadGroup } from './MeasuredField';
+import { newRow, type RawRow } from './raw';
+
+interface ParameterRowsProps {
+  readonly parameter: RowsParameter;
+  readonly rows: readonly RawRow[];
+  readonly system: UnitSystemName;
+  readonly faults: FieldFaults;
+  readonly groups: readonly LoadGroup[];
+  readonly onChange: (rows: readonly RawRow[]) => void;
+}
+
+/** Load groups that every practice knows; a job's own criteria may name more. */
+const USUAL_GROUPS: readonly LoadGroup[] = [
+  { group: 'G', name: 'permanent' },
+  { group: 'Q', name: 'imposed' },
+  { group: 'S', name: 'snow' },
+  { group: 'W', name: 'wind' },
+];
+
+/** A parameter that is a list: one line for each row. */
+export function ParameterRows({ parameter, rows, system, faults, groups, onChange }: ParameterRowsProps) {
+  const { symbol, name, help, columns, most, least } = parameter;
+  const id = useId();
+  const put = (index: number, column: string, cell: RawRow[string]) =>
+    onChange(rows.map((row, at) => (at === index ? { ...row, [column]: cell } : row)));
+  return (
+    <fieldset data-symbol={symbol} className="border-t border-rule px-(--pad) py-10">
+      <legend className="caps float-left mb-6 w-full">{name}</legend>
+      <FieldNote id={`${id}-help`} help={help} error={faults.get(symbol)} />
+      <ol className="clear-both mt-6 grid gap-4">
+        {rows.map((row, index) => (
+          // biome-ignore lint/suspicious/noArrayIndexKey: a row has no identity but its place
+          <li key={index} className="flex flex-wrap items-start gap-10">
+            <span className="min-w-18 pt-7 text-right text-schedule text-ink-2">{index + 1}</span>
+            {columns.map((column) => (
+              <Cell
+                key={column.symbol}
+                column={column}
+                place={`${name} ${index + 1}`}
+                cell={row[column.symbol] ?? ''}
+                groups={groups.length > 0 ? groups : USUAL_GROUPS}
+                error={faults.get(`${symbol}/${index}/${column.symbol}`)}
+                onChange={(cell) => put(index, column.symbol, cell)}
+              />
+            ))}
+            <Button
+              tone="text"
+              aria-label={`Remove row ${index + 1} of ${name}`}
+              onClick={() => onChange(rows.filter((_, at) => at !== index))}
+              reason={rows.length <= least ? 'One row is needed.' : undefined}
+            >
+              Remove
+            </Button>
+            <FieldNote id={`${id}-${index}`} error={faults.get(`${symbol}/${index}`)} />
+          </li>
+        ))}
+      </ol>
+      <div className="mt-8">
+        <Button
+          size="small"
+          reason={rows.length >= most ? `At most ${most} rows.` : undefined}
+          onClick={() => onChange([...rows, newRow(parameter, system)])}
+        >
+          Add a row
+        </Button>
+      </div>
+    </fieldset>
+  );
+}
+
+interface CellProps {
+  readonly column: Column;
+  readonly place: string;
+  readonly cell: RawRow[string];
+  readonly groups: readonly LoadGroup[];
+  readonly error: string | undefined;
+  readonly onChange: (cell: RawRow[string]) => void;
+}
+
+function Cell({ column, place, cell, groups, error, onChange }: CellProps) {
+  const id = useId();
+  const label = `${column.name}, ${place}`;
+  if (column.kind === 'group' || typeof cell === 'string')
+    return (
+      <select
+        aria-label={label}
+        className="input max-w-180"
+        value={String(cell)}
+        onChange={(event) => onChange(event.target.value)}
+      >
+        {groups.every(({ group }) => group !== cell) && <option value={String(cell)}>{String(cell)}</option>}
+        {groups.map(({ group, name }) => (
+          <option key={group} value={group}>
+            {group}, {name}
+          </option>
+        ))}
+      </select>
+    );
+  const reading = readQuantity(cell.text, column.dimension, { unit: cell.unit });
+  const wrong = reading.ok ? error : reading.message;
+  return (
+    <div className="w-150 max-md:w-full">
+      <div className="flex items-baseline border-b-[1.5px] border-ink bg-field focus-within:outline-2 focus-within:outline-ochre">
+        <i className="pl-6 font-semibold">{column.symbol}</i>
+        <input
+          id={id}
+          aria-label={label}
+          aria-invalid={wrong ? true : undefined}
+          aria-describedby={`${id}-note`}
+          autoComplete="off"
+          value={cell.text}
+          onChange={(event) => onChange({ text: event.target.value, unit: cell.unit })}
+          className={`min-h-34 w-full min-w-0 px-6 text-[1rem] outline-none pointer-coarse:min-h-44 ${wrong ? 'text-error' : ''}`}
+        />
+        <span className="pr-6 text-schedule whitespace-nowrap text-ink-2">
+          {cell.unit === 'ft-in' ? 'ft, in' : unitText(cell.unit)}
+        </span>
+      </div>
+      <FieldNote id={`${id}-note`} error={wrong} />
+    </div>
+  );
+}

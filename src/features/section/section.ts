@@ -1,5 +1,6 @@
 import { z } from 'zod';
 import { SECTION_SHAPES, type SectionDimensions, TUBE_STANDARDS } from '@/engine/section';
+import type { SectionValues } from './resolve';
 
 const length = z.number().positive();
 const radius = z.number().nonnegative();
@@ -83,6 +84,22 @@ export function toSectionItem(row: SectionRow, table: string, edition: number): 
   const { key: _key, dimensions, w_el_minor_cm3: _el, w_pl_minor_cm3: _pl, ...shown } = row;
   return { table, edition, ...shown, dimensions_mm: dimensionsMm(dimensions) };
 }
+
+/** An item's dimensions in m again, as the engine takes them. */
+export const dimensionsOf = ({ shape, dimensions_mm }: SectionItem): SectionDimensions =>
+  sectionDimensionsSchema.parse({
+    shape,
+    ...Object.fromEntries(Object.entries(dimensions_mm).map(([symbol, mm]) => [symbol, mm / 1000])),
+  });
+
+/** What a beam needs to know of an item to be made of it. */
+export const toSectionValues = (item: SectionItem): SectionValues => ({
+  designation: item.designation,
+  dimensions: dimensionsOf(item),
+  massKgM: item.mass_kg_m,
+  iMajorCm4: item.i_major_cm4,
+  wElCm3: item.w_el_cm3,
+});
 
 /** What stands beside a section table's CSV: where it comes from and how it is read. */
 export const sectionTableMetaSchema = z.strictObject({

@@ -1,0 +1,29 @@
+import { type Tenant, withPractice } from '@/db/tenancy';
+import { type Criteria, criteriaDocument } from '@/engine/check';
+import { type Person, requirePermission } from '@/features/account/permission';
+import { currentRevisions } from '@/features/review/library.server';
+
+export interface IssuedCriteria {
+  readonly slug: string;
+  readonly reference: string;
+  readonly name: string;
+  readonly revision: number;
+  readonly document: Criteria;
+}
+
+/** The criteria that a member may be judged by: the issued revision of each. */
+export function listCriteria(actor: Person & Tenant): Promise<IssuedCriteria[]> {
+  requirePermission(actor, 'library.read');
+  return withPractice(actor, async (tx) => {
+    const revisions = await currentRevisions(tx, actor.practiceId, 'criteria');
+    return revisions
+      .filter(({ state }) => state === 'issued')
+      .map(({ slug, reference, name, number, body }) => ({
+        slug,
+        reference,
+        name,
+        revision: number,
+        document: criteriaDocument.parse(body),
+      }));
+  });
+}

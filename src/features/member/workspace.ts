@@ -1,0 +1,188 @@
+/** What the member's sheet works with, and the draft that a person makes of it before it is saved. Pure. */
+import type { Criteria } from '@/engine/check';
+import type { Redundant } from '@/engine/model';
+import type { UnitSystemName } from '@/engine/quantity';
+import { materialFor } from '@/engine/section';
+import type { Template } from '@/engine/template';
+import type { SectionValues } from '@/features/section/resolve';
+import { type Raw, toParameters, toRaw } from '@/features/template/raw';
+import type { MemberInputs } from './evaluate';
+import type { MemberView, SaveMember } from './member';
+
+export interface CriteriaChoice {
+  readonly slug: string;
+  readonly reference: string;
+  readonly name: string;
+  readonly revision: number;
+  readonly document: Criteria;
+}
+
+export interface HistoryLine {
+  readonly at: string;
+  readonly by: string;
+  readonly version: string;
+  readonly change: string;
+}
+
+export interface WorkspaceData {
+  readonly member: MemberView;
+  readonly job: { readonly number: string; readonly name: string; readonly unitSystem: UnitSystemName };
+  readonly template: Template;
+  readonly section: SectionValues | null;
+  readonly criteria: readonly CriteriaChoice[];
+  readonly history: readonly HistoryLine[];
+  readonly mayEdit: boolean;
+}
+
+export interface DraftSection {
+  readonly values: SectionValues;
+  readonly table: string;
+  readonly material: string;
+}
+
+/** The member as it stands in the fields. */
+export interface Draft {
+  readonly title: string;
+  readonly purpose: string;
+  readonly raw: Raw;
+  readonly section: DraftSection | null;
+  readonly criteria: string;
+  readonly selfWeight: boolean;
+  readonly selfWeightReason: string;
+  readonly redundants: readonly Redundant[] | null;
+}
+
+export const toDraft = (
+  member: MemberView,
+  template: Template,
+  values: SectionValues | null,
+  system: UnitSystemName,
+): Draft => ({
+  title: member.title,
+  purpose: member.purpose,
+  raw: toRaw(template, member.parameters, { system, byGroup: true }),
+  section:
+    member.section && values
+      ? { values, table: member.section.table, material: member.section.material }
+      : null,
+  criteria: member.criteria?.slug ?? '',
+  selfWeight: member.self_weight,
+  selfWeightReason: member.self_weight_reason,
+  redundants: member.redundants,
+});
+
+type Status = { readonly status: SaveMember['status']; readonly reason: string };
+
+/** The draft as it is sent. */
+export const toBody = (draft: Draft, template: Template, { status, reason }: Status): SaveMember => ({
+  title: draft.title.trim(),
+  purpose: draft.purpose.trim(),
+  status,
+  reason,
+  parameters: toParameters(template, draft.raw),
+  section: draft.section && {
+    designation: draft.section.values.designation,
+    table: draft.section.table,
+    material: draft.section.material,
+  },
+  criteria: draft.criteria || null,
+  self_weight: draft.selfWeight,
+  self_weight_reason: draft.selfWeightReason.trim(),
+  redundants: draft.redundants ? [...draft.redundants] : null,
+});
+
+/** What the draft is evaluated from, in the browser as on the server. */
+export function toInputs(
+  draft: Draft,
+  { template, criteria, job }: Pick<WorkspaceData, 'template' | 'criteria' | 'job'>,
+): MemberInputs {
+  const material = draft.section && materialFor(draft.section.material);
+  return {
+    template,
+    parameters: toParameters(template, draft.raw),
+    system: job.unitSystem,
+    section: draft.section && material ? { values: draft.section.values, material } : null,
+    criteria: criteria.find(({ slug }) => slug === draft.criteria)?.document ?? null,
+    ownWeight: draft.selfWeight,
+    redundants: draft.redundants ?? undefined,
+  };
+}
+
+/** One field in which two versions differ, in words. */
+export interface Difference {
+  readonly field: string;
+  readonly name: string;
+  readonly theirs: string;
+  readonly yours: string;
+}
+
+const words = (value: unknown): string => {
+  if (value === null || value === undefined || value === '') return '–';
+  if (typeof value === 'boolean') return value ? 'yes' : 'no';
+  if (typeof value !== 'object') return String(value);
+  if (Array.isArray(value)) return value.map(words).join('; ');
+  return Object.entries(value)
+    .map(([key, part]) => `${key} ${words(part)}`)
+    .join(', ');
+};
+
+const NAMES: Readonly<Record<string, string>> = {
+  title: 'Title',
+  purpose: 'Purpose',
+  status: 'Status',
+  reason: 'Reason of removal',
+  section: 'Section',
+  criteria: 'Criteria',
+  template: 'Template',
+  self_weight: 'Own weight',
+  self_weight_reason: 'Own weight left out because',
+  redundants: 'Redundants',
+};
+
+/** Every field in which they differ; parameters each by its symbol. */
+export function differencesOf(theirs: Record<string, unknown>, yours: Record<string, unknown>): Difference[] {
+  const flat = ({ parameters, ...rest }: Record<string, unknown>): Map<string, unknown> =>
+    new Map([
+      ...Object.entries(Object(parameters)).map(([symbol, value]): [string, unknown] => [
+        `parameters/${symbol}`,
+        value,
+      ]),
+      ...Object.entries(rest),
+    ]);
+  const [left, right] = [flat(theirs), flat(yours)];
+  return [...right.keys()].flatMap((field): Difference[] => {
+    const [a, b] = [words(left.get(field)), words(right.get(field))];
+    const name = NAMES[field] ?? field.replace('parameters/', '');
+    return a === b || !(field in NAMES || field.startsWith('parameters/'))
+      ? []
+      : [{ field, name, theirs: a, yours: b }];
+  });
+}
+
+/** A member as a body, so that it can be held against a draft. */
+export const bodyOf = (member: MemberView): Record<string, unknown> => ({
+  title: member.title,
+  purpose: member.purpose,
+  parameters: member.parameters,
+  section: member.section && {
+    designation: member.section.designation,
+    table: member.section.table,
+    material: member.section.material,
+  },
+  criteria: member.criteria?.slug ?? null,
+  self_weight: member.self_weight,
+  self_weight_reason: member.self_weight_reason,
+  redundants: member.redundants,
+});
+
+/** What an event of the record says of the member, in a line. */
+export function changesOf(action: string, data: unknown): { version: string; change: string } {
+  const side = (name: 'before' | 'after'): Record<string, unknown> => ({ ...Object(Object(data)[name]) });
+  const version = words(side('after')['version']);
+  if (action === 'member.create') return { version, change: 'First placed.' };
+  if (action === 'member.remove') return { version, change: `Removed: ${words(side('after')['reason'])}` };
+  const changes = differencesOf(side('before'), side('after')).map(
+    ({ name, theirs, yours }) => `${name}: ${theirs} → ${yours}`,
+  );
+  return { version, change: changes.join('; ') || 'Saved without a change.' };
+}

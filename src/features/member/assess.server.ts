@@ -1,9 +1,10 @@
+import { type DerivationStep, derive } from '@/engine/derivation';
 import type { UnitSystemName } from '@/engine/quantity';
 import { ENGINE_VERSION } from '@/engine/version';
 import { invalid } from '@/lib/app-error';
 import { contentHash } from '@/lib/fingerprint';
 import { pointer } from '@/lib/pointer';
-import { evaluateMember } from './evaluate';
+import { evaluateMember, type MemberEvaluation } from './evaluate';
 import type { SaveMember, TriedView } from './member';
 import type { Pins } from './pins.server';
 import { type StoredResult, toStoredResult } from './result';
@@ -18,6 +19,14 @@ export interface Assessment extends TriedView {
 
 /** As the database gives it back: without undefined, typed arrays as lists. */
 const plain = <T>(value: T): T => JSON.parse(JSON.stringify(value));
+
+/** With the redundants that the stored solution was found by, and the template's letters. */
+const derivationOf = ({ beam, total, instance }: MemberEvaluation): DerivationStep[] =>
+  derive({
+    beam,
+    redundants: total.forceMethod.redundants,
+    names: { lengths: instance.dimensions, loads: instance.loadNames },
+  });
 
 /**
  * What the server finds for a member, with the fingerprint over everything that it follows from: inputs, the content of
@@ -38,7 +47,10 @@ export function assessMember(pins: Pins, given: Given, system: UnitSystemName): 
     throw invalid(
       reading.faults.map(({ path, code, message }) => ({ pointer: pointer(path), code, message })),
     );
-  const result = plain(toStoredResult(reading.evaluation));
+  const found = toStoredResult(reading.evaluation);
+  const result = plain(
+    found.kind === 'result' ? { ...found, derivation: derivationOf(reading.evaluation) } : found,
+  );
   const content = {
     inputs: { ...given, system, material: section?.material.id ?? null },
     pins: {

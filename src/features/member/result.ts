@@ -1,6 +1,7 @@
 import { z } from 'zod';
 import type { Reaction, Solution } from '@/engine/beam';
 import type { CheckRow, Combination, DeflectionLimit, Finding } from '@/engine/check';
+import type { DerivationStep } from '@/engine/derivation';
 import type { Beam } from '@/engine/model';
 import { type Piecewise, piecewise } from '@/engine/polynomial';
 import type { Dimensioned, NamedLoad, RuleOutcome } from '@/engine/template';
@@ -41,6 +42,8 @@ export type MemberResult = {
   } | null;
   readonly rules: readonly RuleOutcome[];
   readonly proof: ProofLine;
+  /** The worked derivation under all loads together. The server adds it: a drag in the browser does without. */
+  readonly derivation?: readonly DerivationStep[];
 };
 
 /** Kept in place of a result that its proof does not bear out. */

@@ -98,7 +98,7 @@ describe('any beam', { timeout: 60_000 }, () => {
     fc.assert(
       fc.property(anyBeam, ({ document, beam }) => {
         const mirrored = solveBeam(stableBeam(mirror(document)));
-        const { reactions, extremes } = solveBeam(beam);
+        const { reactions, extremes, contraflexure } = solveBeam(beam);
         const forces = largest(reactions.map(({ vertical }) => vertical));
         const moments = largest(reactions.map(({ moment }) => moment));
         reactions.forEach(({ vertical, moment }, i) => {
@@ -117,7 +117,9 @@ describe('any beam', { timeout: 60_000 }, () => {
           expect(Math.abs(here.value - sign * there.value)).toBeLessThanOrEqual(
             1e-9 * Math.abs(here.value) + 1e-13,
           );
+          expectMirrored(here.at, there.at, beam.length);
         }
+        expectMirrored(contraflexure, mirrored.contraflexure, beam.length);
       }),
       RUNS,
     );
@@ -164,6 +166,13 @@ describe('any beam', { timeout: 60_000 }, () => {
     );
   });
 });
+
+/** The same places, counted from the other end. */
+function expectMirrored(here: readonly number[], there: readonly number[], length: number): void {
+  expect(there).toHaveLength(here.length);
+  const apart = here.map((x, i) => Math.abs(length - there.at(-1 - i)! - x));
+  expect(Math.max(0, ...apart)).toBeLessThanOrEqual(1e-7 * length);
+}
 
 function mirror(document: BeamDocument): BeamDocument {
   const { length } = document;

@@ -54,6 +54,22 @@ describe('extremes(p)', () => {
     expect(extremes(still).max.at).toEqual([0, 1, 2]);
   });
 
+  test('takes the end for the place where the function levels out towards it', () => {
+    const [a, b] = [0.1 + 0.2, 0.7];
+    for (const order of [2, 3, 4]) {
+      // (x − b)ⁿ about a, whose n-fold root at b rounding moves inside the piece
+      const h = b - a;
+      const binomial = [
+        [1, -2, 1],
+        [-1, 3, -3, 1],
+        [1, -4, 6, -4, 1],
+      ][order - 2]!;
+      const p = piecewise([a, b], [binomial.map((c, j) => c * h ** (order - j))]);
+      const { max, min } = extremes(p);
+      expect([...max.at, ...min.at].sort()).toEqual([a, b]);
+    }
+  });
+
   test('calls a value that is nothing beside the largest 0, and never −0', () => {
     const { max } = extremes(piecewise([0, 1], [[-1, 1 - 2 ** -50]]));
     expect(Object.is(max.value, 0)).toBe(true);

@@ -33,19 +33,32 @@ export function extremes(p: Piecewise): { max: Extreme; min: Extreme } {
   return { max: attained(max), min: attained(min) };
 }
 
+/** Ends and turning points, piece by piece. */
 function candidatesOf(p: Piecewise): Candidate[] {
   const derivative = differentiate(p);
   const pieces = Array.from({ length: pieceCount(p) }, (_, k) => {
     const [from, to] = [p.breaks[k]!, p.breaks[k + 1]!];
     const at = (x: number): Candidate => ({ x, value: evaluatePiece(p, k, x - from) });
-    const ends = [at(from), at(to)];
-    return { ends, all: [...ends, ...rootsOfPiece(derivative, k).map(at)] };
+    return { left: at(from), turns: rootsOfPiece(derivative, k).map(at), right: at(to) };
   });
-  const largest = largestOf(pieces.flatMap(({ all }) => all));
-  return pieces.flatMap(({ ends, all }) => {
-    const { max, min } = range(all);
-    return max - min <= ROUNDING * largest ? ends : all;
-  });
+  const largest = largestOf(pieces.flatMap(({ left, turns, right }) => [left, ...turns, right]));
+  return pieces.flatMap((piece) => distinct(piece, ROUNDING * largest));
+}
+
+/**
+ * The ends, and the turning points that differ from what is beside them. A piece that levels out towards its end has
+ * a multiple root of p' there, which rounding moves: by 1e-8 of the piece where it is double, by 1e-5 where triple.
+ */
+function distinct(
+  { left, turns, right }: { left: Candidate; turns: Candidate[]; right: Candidate },
+  rounding: number,
+): Candidate[] {
+  const kept = [left];
+  for (const turn of turns) {
+    if (Math.abs(turn.value - kept.at(-1)!.value) > rounding) kept.push(turn);
+  }
+  while (kept.length > 1 && Math.abs(kept.at(-1)!.value - right.value) <= rounding) kept.pop();
+  return [...kept, right];
 }
 
 function range(candidates: readonly Candidate[]): { max: number; min: number } {

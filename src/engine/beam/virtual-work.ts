@@ -57,30 +57,26 @@ export function unitState(
     // A sagging pair turns what is left of the cut anticlockwise, and what is right of it clockwise.
     return turnAt(motion, at, 'right').minus(turnAt(motion, at, 'left'));
   });
-  const acting = new Map<number, { up: Wide; turn: Wide }>();
-  const act = (x: number, component: string, value: Wide) => {
-    const before = acting.get(mesh.index.get(x)!) ?? { up: Wide.ZERO, turn: Wide.ZERO };
-    const up = component === 'vertical' ? before.up.plus(value) : before.up;
-    const turn = component === 'rotation' ? before.turn.plus(value) : before.turn;
-    acting.set(mesh.index.get(x)!, { up, turn });
-  };
-  reactions.forEach((reaction, c) => {
-    act(reaction.at, reaction.component, values[c]!);
+  const [up, turn] = [new Map<number, Wide>(), new Map<number, Wide>()];
+  reactions.forEach(({ at: place, component }, c) => {
+    (component === 'vertical' ? up : turn).set(mesh.index.get(place)!, values[c]!);
   });
-  act(at, redundant.component, Wide.ONE);
-  return { reactions: values, ...lines(members, acting) };
+  if (redundant.component !== 'moment') {
+    (redundant.component === 'vertical' ? up : turn).set(mesh.index.get(at)!, Wide.ONE);
+  }
+  return { reactions: values, ...lines(members, up, turn) };
 }
 
-function lines(members: readonly Member[], acting: ReadonlyMap<number, { up: Wide; turn: Wide }>) {
+type AtPoint = ReadonlyMap<number, Wide>;
+
+/** Shear and moment of a beam that is loaded at its joints only, from the left end. */
+function lines(members: readonly Member[], up: AtPoint, turn: AtPoint) {
   let [shear, moment] = [Wide.ZERO, Wide.ZERO];
   const shears: Wide[] = [];
   const moments: Wide[] = [];
   for (const { from, length } of members) {
-    const here = acting.get(from);
-    if (here) {
-      shear = shear.plus(here.up);
-      moment = moment.minus(here.turn);
-    }
+    shear = shear.plus(up.get(from) ?? Wide.ZERO);
+    moment = moment.minus(turn.get(from) ?? Wide.ZERO);
     shears.push(shear);
     moments.push(moment);
     moment = moment.plus(shear.times(length));

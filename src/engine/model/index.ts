@@ -1,4 +1,4 @@
-export { describeMotion, releaseMechanism } from './motion';
+export { releaseMechanism } from './motion';
 export { readBeam } from './read';
 export { COINCIDENT } from './reader';
 export {
@@ -8,6 +8,6 @@ export {
   eligibleRedundants,
   placeRedundant,
 } from './redundants';
-export { type Frame, findMotion, frameOf, type MovingPart, riseOf } from './stability';
+export { findMotion, frameOf, type MovingPart, riseOf } from './stability';
 export * from './types';
 export { nameRedundant, nameSupport } from './words';

@@ -11,7 +11,7 @@ export function releaseMechanism(beam: Holding, released: readonly Redundant[]):
 }
 
 /** The displaced shape, straight between its corners, with 1 as its largest deflection. */
-export function shapeOf(length: number, parts: readonly MovingPart[]): DisplacedShape {
+function shapeOf(length: number, parts: readonly MovingPart[]): DisplacedShape {
   const [first, last] = [parts[0]!, parts.at(-1)!];
   const corners = new Map<number, number>([
     [0, 0],

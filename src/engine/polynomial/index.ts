@@ -13,6 +13,5 @@ export {
   scale,
   withoutBreaks,
 } from './piecewise';
-export { rootsOfPiece } from './roots';
 export { signChanges } from './sign-changes';
 export type { Extreme, Piecewise } from './types';

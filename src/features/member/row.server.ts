@@ -1,4 +1,4 @@
-import { aliasedTable, and, asc, eq, getTableColumns, gt } from 'drizzle-orm';
+import { aliasedTable, and, asc, eq, getTableColumns, gt, type SQL } from 'drizzle-orm';
 import { z } from 'zod';
 import type { Tx } from '@/db/client';
 import { person } from '@/db/schema/account';
@@ -27,7 +27,14 @@ const stored = {
 };
 export type Settings = z.output<typeof stored.settings>;
 
-const select = (tx: Tx) =>
+type Selected = typeof member.$inferSelect & {
+  readonly section: string | null;
+  readonly creator: string;
+  readonly changer: string;
+  readonly evaluator: string | null;
+};
+
+const select = (tx: Tx, where: SQL | undefined, limit: number): Promise<Selected[]> =>
   tx
     .select({
       ...getTableColumns(member),
@@ -40,9 +47,11 @@ const select = (tx: Tx) =>
     .innerJoin(creator, eq(creator.id, member.createdById))
     .innerJoin(changer, eq(changer.id, member.changedById))
     .leftJoin(evaluator, eq(evaluator.id, member.evaluatedById))
-    .leftJoin(section, and(eq(section.practiceId, member.practiceId), eq(section.id, member.sectionId)));
-
-type Selected = Awaited<ReturnType<typeof select>>[number];
+    .leftJoin(section, and(eq(section.practiceId, member.practiceId), eq(section.id, member.sectionId)))
+    .where(where)
+    .orderBy(asc(member.mark))
+    .limit(limit)
+    .execute();
 
 const read = (row: Selected) => ({
   ...row,
@@ -60,8 +69,10 @@ export async function findMember(
   jobId: string,
   mark: string,
 ): Promise<MemberRow | undefined> {
-  const [found] = await select(tx).where(
+  const [found] = await select(
+    tx,
     and(eq(member.practiceId, practiceId), eq(member.jobId, jobId), eq(member.mark, mark)),
+    1,
   );
   return found && read(found);
 }
@@ -84,16 +95,15 @@ export async function pageOfMembers(
   jobId: string,
   { after, limit }: { readonly after?: string | undefined; readonly limit: number },
 ): Promise<{ rows: MemberItem[]; isLast: boolean }> {
-  const found = await select(tx)
-    .where(
-      and(
-        eq(member.practiceId, practiceId),
-        eq(member.jobId, jobId),
-        after === undefined ? undefined : gt(member.mark, after),
-      ),
-    )
-    .orderBy(asc(member.mark))
-    .limit(limit + 1);
+  const found = await select(
+    tx,
+    and(
+      eq(member.practiceId, practiceId),
+      eq(member.jobId, jobId),
+      after === undefined ? undefined : gt(member.mark, after),
+    ),
+    limit + 1,
+  );
   const rows = found.slice(0, limit).map(read);
   const pinned = await revisionsById(tx, practiceId, [
     ...new Set(rows.map(({ templateRevisionId }) => templateRevisionId)),

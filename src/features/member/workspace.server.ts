@@ -31,7 +31,7 @@ export async function readWorkspace(user: Actor, number: string, mark: string): 
       member: await toMemberView(tx, row, job.number, { template, criteria, section }),
       job: { number: job.number, name: job.name, unitSystem: job.unitSystem },
       template: template.document,
-      section: section && section.row.values,
+      section: section?.row.values ?? null,
       criteria: pinned ? [pinned, ...others] : others,
       history: await historyOf(tx, user.practiceId, row.id),
       // The database opened the job to this person; what is left to ask is the role.

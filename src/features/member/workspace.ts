@@ -140,8 +140,10 @@ const NAMES: Readonly<Record<string, string>> = {
 };
 
 /** Every field in which they differ; parameters each by its symbol. */
-export function differencesOf(theirs: Record<string, unknown>, yours: Record<string, unknown>): Difference[] {
-  const flat = ({ parameters, ...rest }: Record<string, unknown>): Map<string, unknown> =>
+type Fields = { readonly [field: string]: unknown };
+
+export function differencesOf(theirs: Fields, yours: Fields): Difference[] {
+  const flat = ({ parameters, ...rest }: Fields): Map<string, unknown> =>
     new Map([
       ...Object.entries(Object(parameters)).map(([symbol, value]): [string, unknown] => [
         `parameters/${symbol}`,
@@ -160,7 +162,9 @@ export function differencesOf(theirs: Record<string, unknown>, yours: Record<str
 }
 
 /** A member as a body, so that it can be held against a draft. */
-export const bodyOf = (member: MemberView): Record<string, unknown> => ({
+export const bodyOf = (member: MemberView): SaveMember => ({
+  status: member.status,
+  reason: member.reason,
   title: member.title,
   purpose: member.purpose,
   parameters: member.parameters,
@@ -174,6 +178,19 @@ export const bodyOf = (member: MemberView): Record<string, unknown> => ({
   self_weight_reason: member.self_weight_reason,
   redundants: member.redundants,
 });
+
+/** My body with the fields that are taken from theirs. */
+export function settle(theirs: SaveMember, mine: SaveMember, taken: ReadonlySet<string>): SaveMember {
+  const fields = Object.entries(theirs).filter(([field]) => taken.has(field));
+  const parameters = Object.entries(theirs.parameters).filter(([symbol]) =>
+    taken.has(`parameters/${symbol}`),
+  );
+  return {
+    ...mine,
+    ...Object.fromEntries(fields),
+    parameters: { ...mine.parameters, ...Object.fromEntries(parameters) },
+  };
+}
 
 /** What an event of the record says of the member, in a line. */
 export function changesOf(action: string, data: unknown): { version: string; change: string } {

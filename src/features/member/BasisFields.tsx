@@ -1,0 +1,68 @@
+import { Checkbox } from '@/components/ui/Choice';
+import { ChoiceField, Field } from '@/components/ui/Field';
+import type { FieldFaults } from '@/features/template/faults';
+import { materialsFor } from '@/features/template/section-pick';
+import type { CriteriaChoice, Draft } from './workspace';
+
+interface BasisFieldsProps {
+  readonly draft: Draft;
+  readonly criteria: readonly CriteriaChoice[];
+  readonly faults: FieldFaults;
+  readonly onChange: (part: Partial<Draft>) => void;
+}
+
+/** What the member is made of and judged by, beside its parameters. */
+export function BasisFields({ draft, criteria, faults, onChange }: BasisFieldsProps) {
+  const { section } = draft;
+  return (
+    <>
+      {section && (
+        <div className="px-14 pt-8 pb-9">
+          <ChoiceField
+            label="Material"
+            value={section.material}
+            choices={materialsFor(section.values).map(({ id, name }) => ({ value: id, label: name }))}
+            error={faults.get('section/material') ?? faults.get('section')}
+            help={section.values.designation}
+            onChange={(event) => onChange({ section: { ...section, material: event.target.value } })}
+          />
+        </div>
+      )}
+      <div className="px-14 pt-8 pb-9">
+        <ChoiceField
+          label="Criteria"
+          value={draft.criteria}
+          choices={[
+            { value: '', label: 'Not chosen' },
+            ...criteria.map(({ slug, name }) => ({ value: slug, label: name })),
+          ]}
+          error={faults.get('criteria')}
+          help={criteria.find(({ slug }) => slug === draft.criteria)?.document.summary}
+          onChange={(event) => onChange({ criteria: event.target.value })}
+        />
+      </div>
+      <div className="px-14 pt-8 pb-9">
+        <span className="caps mb-2 block">Own weight</span>
+        <Checkbox
+          checked={draft.selfWeight}
+          onChange={(event) => onChange({ selfWeight: event.target.checked })}
+        >
+          Of the section, in G
+        </Checkbox>
+        {!draft.selfWeight && (
+          <Field
+            label="Left out because"
+            value={draft.selfWeightReason}
+            maxLength={300}
+            error={
+              draft.selfWeightReason.trim() === ''
+                ? 'Say why. The reason is printed on the sheet.'
+                : undefined
+            }
+            onChange={(event) => onChange({ selfWeightReason: event.target.value })}
+          />
+        )}
+      </div>
+    </>
+  );
+}

@@ -1,0 +1,149 @@
+import { RichHtml } from '@/components/drawing/marks/RichHtml';
+import { ZoneHeading } from '@/components/ui/ZoneHeading';
+import { letteredSupports } from '@/engine/check';
+import type { Load } from '@/engine/model';
+import { formatFor, type UnitSystemName } from '@/engine/quantity';
+import { drawnName } from '@/features/template/names';
+import type { MemberEvaluation } from './evaluate';
+import { groupName } from './views';
+
+interface ZoneProps {
+  readonly evaluation: MemberEvaluation | null;
+  readonly system: UnitSystemName;
+}
+
+const KINDS = { point: 'point', line: 'line', couple: 'couple', curvature: 'curvature' } as const;
+
+function loadText(load: Load, system: UnitSystemName): string {
+  switch (load.kind) {
+    case 'point':
+      return `${formatFor(load.p, 'force', system)} at ${formatFor(load.at, 'position', system)}`;
+    case 'line': {
+      const at = `${formatFor(load.from, 'position', system)} to ${formatFor(load.to, 'position', system)}`;
+      const [w0, w1] = [load.w0, load.w1].map((w) => formatFor(w, 'line_load', system));
+      return `${w0 === w1 ? w0 : `${w0} to ${w1}`}, ${at}`;
+    }
+    case 'couple':
+      return `${formatFor(load.m, 'moment', system)} at ${formatFor(load.at, 'position', system)}`;
+    case 'curvature':
+      return formatFor(load.kappa, 'curvature', system);
+  }
+}
+
+/** Every load with the group that it belongs to, unfactored. */
+export function LoadGroupsZone({ evaluation, system }: ZoneProps) {
+  return (
+    <section className="zone">
+      <ZoneHeading letter="D" note="unfactored, down positive">
+        Load groups
+      </ZoneHeading>
+      {evaluation && (
+        <table className="schedule">
+          <thead>
+            <tr>
+              <th scope="col">Group</th>
+              <th scope="col">Kind</th>
+              <th scope="col">Load</th>
+            </tr>
+          </thead>
+          <tbody>
+            {evaluation.beam.loads.map((load, index) => {
+              const name = evaluation.instance.loadNames[index];
+              return (
+                // biome-ignore lint/suspicious/noArrayIndexKey: a load has no identity but its place in the beam
+                <tr key={index}>
+                  <th scope="row">
+                    {groupName(load.group ?? '')}{' '}
+                    <i className="font-normal">{name && <RichHtml text={drawnName(name.tex)} />}</i>
+                  </th>
+                  <td>{KINDS[load.kind]}</td>
+                  <td>{loadText(load, system)}</td>
+                </tr>
+              );
+            })}
+          </tbody>
+        </table>
+      )}
+    </section>
+  );
+}
+
+/** Reactions of each group alone, so that the next member can combine them afresh, with the most and least. */
+export function ReactionsZone({ evaluation, system }: ZoneProps) {
+  return (
+    <section className="zone">
+      <ZoneHeading letter="F" note="unfactored, by group, so that the next member can combine them afresh">
+        Reactions
+      </ZoneHeading>
+      {evaluation && (
+        <div className="overflow-x-auto">
+          <table className="schedule">
+            <thead>
+              <tr>
+                <th scope="col">Support</th>
+                {evaluation.groups.map(({ group }) => (
+                  <th key={group} scope="col" className="figure">
+                    {groupName(group)}
+                  </th>
+                ))}
+                <th scope="col" className="figure">
+                  All
+                </th>
+                <th scope="col" className="figure">
+                  Most<small>strength</small>
+                </th>
+                <th scope="col" className="figure">
+                  Least<small>strength</small>
+                </th>
+              </tr>
+            </thead>
+            <tbody>
+              {reactionRows(evaluation).map(({ name, purpose, groups, total, most, least }) => (
+                <tr key={name}>
+                  <th scope="row">{name}</th>
+                  {groups.map(({ group, value }) => (
+                    <td key={group} className="figure">
+                      {formatFor(value, purpose, system)}
+                    </td>
+                  ))}
+                  <td className="figure">{formatFor(total, purpose, system)}</td>
+                  <td className="figure">{most === null ? '–' : formatFor(most, purpose, system)}</td>
+                  <td className="figure">
+                    {least === null ? '–' : formatFor(least, purpose, system)}
+                    {purpose === 'reaction' && (least ?? total) < -1e-6 && (
+                      <b className="ml-6 font-semibold text-ochre-ink">uplift</b>
+                    )}
+                  </td>
+                </tr>
+              ))}
+            </tbody>
+          </table>
+        </div>
+      )}
+    </section>
+  );
+}
+
+function reactionRows({ beam, groups, total, strength }: MemberEvaluation) {
+  const letters = new Map(letteredSupports(beam).map(({ at, letter }) => [at, letter]));
+  return beam.supports.flatMap((support, index) => {
+    const row = (component: 'vertical' | 'moment', words: string) => {
+      const all = strength.map(({ solution }) => solution.reactions[index]?.[component] ?? 0);
+      return {
+        name: `${letters.get(support.at) ?? ''}, ${words}`,
+        purpose: component === 'vertical' ? ('reaction' as const) : ('moment' as const),
+        groups: groups.map(({ group, solution }) => ({
+          group,
+          value: solution.reactions[index]?.[component] ?? 0,
+        })),
+        total: total.reactions[index]?.[component] ?? 0,
+        most: all.length > 0 ? Math.max(...all) : null,
+        least: all.length > 0 ? Math.min(...all) : null,
+      };
+    };
+    return [
+      ...(support.vertical.kind === 'free' ? [] : [row('vertical', 'force, up')]),
+      ...(support.rotation.kind === 'free' ? [] : [row('moment', 'moment, anticlockwise')]),
+    ];
+  });
+}

@@ -1,0 +1,147 @@
+import { useState } from 'react';
+import { Button } from '@/components/ui/Button';
+import { Radio } from '@/components/ui/Choice';
+import { Notice } from '@/components/ui/Notice';
+import type { MemberView, Pin, SaveMember } from './member';
+import type { SaveState } from './use-member';
+import { bodyOf, differencesOf, settle } from './workspace';
+
+/** What is newer in the library than what the member pins. It is said; nothing is upgraded. */
+export function PinNotices({ member }: { readonly member: MemberView }) {
+  const { template, criteria, section } = member;
+  const lines = [template, ...(criteria ? [criteria] : [])].flatMap((pin) => pinLine(pin));
+  const edition: Line[] =
+    section?.newer == null
+      ? []
+      : [
+          {
+            title: `Edition ${section.newer} of ${section.table_name} is issued. This member still uses edition ${section.edition}.`,
+            detail: 'Its section keeps the figures of that edition.',
+            tone: 'caution',
+          },
+        ];
+  return [...lines, ...edition].map(({ title, detail, tone }) => (
+    <Notice key={title} title={title} tone={tone}>
+      <p>{detail}</p>
+    </Notice>
+  ));
+}
+
+interface Line {
+  readonly title: string;
+  readonly detail: string;
+  readonly tone: 'caution' | 'error';
+}
+
+function pinLine({ reference, revision, state, newer, newer_note, withdrawal_reason }: Pin): Line[] {
+  if (state === 'withdrawn')
+    return [
+      {
+        title: `${reference} revision ${revision} was withdrawn: ${withdrawal_reason}`,
+        detail: `This member still uses it.${newer === null ? '' : ` Revision ${newer} is issued.`} Check what the fault means here before the member goes on.`,
+        tone: 'error',
+      },
+    ];
+  return newer === null
+    ? []
+    : [
+        {
+          title: `${reference} revision ${newer} is issued. This member still uses revision ${revision}.`,
+          detail: newer_note ?? '',
+          tone: 'caution',
+        },
+      ];
+}
+
+interface SaveNoticeProps {
+  readonly saving: SaveState;
+  readonly body: SaveMember;
+  /** Save over theirs, each field as it was chosen. */
+  readonly onSettle: (current: MemberView, body: SaveMember) => void;
+  readonly onTakeTheirs: () => void;
+}
+
+/** What came of the last save, where a person has something to settle. */
+export function SaveNotice({ saving, body, onSettle, onTakeTheirs }: SaveNoticeProps) {
+  if (saving.kind === 'refused')
+    return (
+      <Notice tone="error" title={`Not saved. ${saving.message}`}>
+        {saving.faults.length > 1 && (
+          <ul className="list-disc pl-18">
+            {saving.faults.map(({ pointer, message }) => (
+              <li key={pointer + message}>{message}</li>
+            ))}
+          </ul>
+        )}
+      </Notice>
+    );
+  if (saving.kind === 'saved' && !saving.isSame)
+    return (
+      <Notice
+        tone="error"
+        title="Saved, but the server found other figures than this browser shows. Read the page again before you rely on either, and report it."
+      />
+    );
+  if (saving.kind !== 'stale') return null;
+  return <StaleNotice current={saving.current} body={body} onSettle={onSettle} onTakeTheirs={onTakeTheirs} />;
+}
+
+type StaleProps = Omit<SaveNoticeProps, 'saving'> & { readonly current: MemberView };
+
+function StaleNotice({ current, body, onSettle, onTakeTheirs }: StaleProps) {
+  const theirs = bodyOf(current);
+  const differences = differencesOf(theirs, body);
+  const [taken, setTaken] = useState<ReadonlySet<string>>(new Set());
+  const choose = (field: string, isTheirs: boolean) => {
+    const next = new Set(taken);
+    if (isTheirs) next.add(field);
+    else next.delete(field);
+    setTaken(next);
+  };
+  return (
+    <Notice
+      tone="error"
+      title={`Not saved. ${current.changed_by} saved version ${current.version} after you opened this member. Nothing you typed is lost.`}
+      actions={
+        <>
+          <Button onClick={() => onSettle(current, settle(theirs, body, taken))}>
+            Save with these choices
+          </Button>
+          <Button onClick={onTakeTheirs}>Take all of theirs</Button>
+        </>
+      }
+    >
+      {differences.length === 0 ? (
+        <p>Theirs and yours say the same.</p>
+      ) : (
+        <table className="schedule mt-6 bg-paper">
+          <thead>
+            <tr>
+              <th scope="col">Field</th>
+              <th scope="col">Theirs</th>
+              <th scope="col">Yours</th>
+            </tr>
+          </thead>
+          <tbody>
+            {differences.map((difference) => (
+              <tr key={difference.field}>
+                <th scope="row">{difference.name}</th>
+                {(['theirs', 'yours'] as const).map((side) => (
+                  <td key={side} className="break-words">
+                    <Radio
+                      name={`settle ${difference.field}`}
+                      checked={taken.has(difference.field) === (side === 'theirs')}
+                      onChange={() => choose(difference.field, side === 'theirs')}
+                    >
+                      {difference[side]}
+                    </Radio>
+                  </td>
+                ))}
+              </tr>
+            ))}
+          </tbody>
+        </table>
+      )}
+    </Notice>
+  );
+}

@@ -1,0 +1,149 @@
+import { useState } from 'react';
+import { Button } from '@/components/ui/Button';
+import { Field } from '@/components/ui/Field';
+import { UtilisationTick } from '@/components/ui/UtilisationTick';
+import { ZoneHeading } from '@/components/ui/ZoneHeading';
+import { formatFor, readQuantity, type UnitSystemName } from '@/engine/quantity';
+import type { SectionItem } from '@/features/section/section';
+import { draftSection, type Utilisation } from './candidates';
+import type { MemberInputs } from './evaluate';
+import { type Candidates, useCandidates, useUtilisations } from './use-candidates';
+import type { DraftSection } from './workspace';
+
+interface SectionZoneProps {
+  readonly section: DraftSection | null;
+  readonly inputs: MemberInputs;
+  readonly system: UnitSystemName;
+  readonly mayEdit: boolean;
+  readonly onPick: (section: DraftSection) => void;
+}
+
+const UNITS = {
+  metric: { depth: 'mm', mass: 'kg/m', massName: 'kg/m' },
+  us: { depth: 'in', mass: 'lbm/ft', massName: 'lb/ft' },
+} as const;
+const NONE: readonly SectionItem[] = [];
+
+/** Sections by designation, depth and mass, the lightest first, each judged with the member's loads. */
+export function SectionZone({ section, inputs, system, mayEdit, onPick }: SectionZoneProps) {
+  const [text, setText] = useState({ q: '', depth: '', mass: '' });
+  const units = UNITS[system];
+  const depth = limit(text.depth, 'length', units.depth);
+  const mass = limit(text.mass, 'mass_per_length', units.mass);
+  const search = {
+    q: text.q,
+    depthMax: depth.value === null ? null : depth.value * 1000,
+    massMax: mass.value,
+  };
+  const found = useCandidates(search, section);
+  const items = found.state === 'found' ? found.items : NONE;
+  const utilisations = useUtilisations(items, inputs, section?.material);
+  const field = (name: 'q' | 'depth' | 'mass') => ({
+    value: text[name],
+    onChange: (event: { target: { value: string } }) => setText({ ...text, [name]: event.target.value }),
+  });
+  return (
+    <section className="zone">
+      <ZoneHeading letter="C" note="lightest first">
+        Section
+      </ZoneHeading>
+      <div className="mb-10 grid grid-cols-[minmax(0,2fr)_minmax(0,1fr)_minmax(0,1fr)] gap-14 max-md:grid-cols-2">
+        <div className="max-md:col-span-2">
+          <Field label="Designation" type="search" autoComplete="off" {...field('q')} />
+        </div>
+        <Field label={`Depth at most, ${units.depth}`} error={depth.fault} {...field('depth')} />
+        <Field label={`Mass at most, ${units.massName}`} error={mass.fault} {...field('mass')} />
+      </div>
+      <p role="status" className="text-schedule text-ink-2 empty:hidden">
+        {said(found, section)}
+      </p>
+      {items.length > 0 && (
+        <table className="schedule stacking">
+          <thead>
+            <tr>
+              <th scope="col">Section</th>
+              <th scope="col" className="figure">
+                Mass<small>{units.massName}</small>
+              </th>
+              <th scope="col">Bending</th>
+              <th scope="col">Shear</th>
+              <th scope="col">Deflection</th>
+              {mayEdit && <th scope="col">Use</th>}
+            </tr>
+          </thead>
+          <tbody>
+            {items.map((item) => (
+              <Row
+                key={`${item.table} ${item.designation}`}
+                item={item}
+                utilisation={utilisations.get(item)}
+                isUsed={section?.table === item.table && section.values.designation === item.designation}
+                system={system}
+                onPick={mayEdit ? () => onPick(draftSection(item, section?.material)) : undefined}
+              />
+            ))}
+          </tbody>
+        </table>
+      )}
+    </section>
+  );
+}
+
+function limit(text: string, dimension: 'length' | 'mass_per_length', unit: string) {
+  if (text.trim() === '') return { value: null };
+  const reading = readQuantity(text, dimension, { unit });
+  return reading.ok ? { value: reading.value } : { value: null, fault: reading.message };
+}
+
+function said(found: Candidates, section: DraftSection | null): string {
+  if (found.state === 'failed') return found.message;
+  if (found.state === 'reading') return 'Looking in the section tables';
+  if (found.state !== 'found') return 'Say a designation, a depth or a mass to look for.';
+  if (found.total === 0) return 'No section answers this. Allow more depth or mass, or another designation.';
+  return found.total > found.items.length
+    ? `The lightest ${found.items.length} of ${found.total}${section ? '' : '; none is chosen yet'}.`
+    : '';
+}
+
+interface RowProps {
+  readonly item: SectionItem;
+  readonly utilisation: Utilisation | string | undefined;
+  readonly isUsed: boolean;
+  readonly system: UnitSystemName;
+  readonly onPick: (() => void) | undefined;
+}
+
+function Row({ item, utilisation, isUsed, system, onPick }: RowProps) {
+  const isSaid = typeof utilisation === 'string';
+  const mass = formatFor(item.mass_kg_m, 'mass_per_length', system).split('\u00a0')[0];
+  return (
+    <tr data-chosen={isUsed ? '' : undefined}>
+      <th scope="row" className="whitespace-nowrap">
+        {item.designation}
+      </th>
+      <td className="figure" data-label="Mass">
+        {mass}
+      </td>
+      {isSaid ? (
+        <td colSpan={3}>{utilisation}</td>
+      ) : (
+        (['bending', 'shear', 'deflection'] as const).map((kind) => (
+          <td key={kind} data-label={kind.charAt(0).toUpperCase() + kind.slice(1)}>
+            {utilisation?.[kind] == null ? '–' : <UtilisationTick ratio={utilisation[kind]} width={48} />}
+          </td>
+        ))
+      )}
+      {onPick && (
+        <td data-label="">
+          {isUsed ? (
+            <b className="font-semibold">in use</b>
+          ) : (
+            <Button tone="text" aria-label={`Use ${item.designation}`} onClick={onPick}>
+              Use
+            </Button>
+          )}
+        </td>
+      )}
+    </tr>
+  );
+}

@@ -1,0 +1,61 @@
+import type { CheckKind } from '@/engine/check';
+import { materialFor } from '@/engine/section';
+import { sectionValuesOf } from '@/features/section/item-values';
+import type { SectionItem } from '@/features/section/section';
+import { materialsFor } from '@/features/template/section-pick';
+import { evaluateMember, type MemberInputs } from './evaluate';
+import type { DraftSection } from './workspace';
+
+/** What a person looks for; sizes in mm and kg/m, empty where anything will do. */
+export interface SectionSearch {
+  readonly q: string;
+  readonly depthMax: number | null;
+  readonly massMax: number | null;
+}
+
+const MOST = '10';
+/** A list that nobody has narrowed begins with sections a quarter lighter than the one in use. */
+const LIGHTER = 0.75;
+
+/** The query of GET /api/v1/sections, the lightest first. Null where nothing is said to look for. */
+export function sectionQuery(
+  { q, depthMax, massMax }: SectionSearch,
+  current: DraftSection | null,
+): Record<string, string> | null {
+  const isOpen = q.trim() === '' && depthMax === null && massMax === null;
+  if (isOpen && !current) return null;
+  const inTable = q.trim() === '' && current ? { table: current.table } : {};
+  return {
+    limit: MOST,
+    sort: 'mass',
+    ...inTable,
+    ...(q.trim() !== '' && { q: q.trim() }),
+    ...(depthMax !== null && { depth_max: String(depthMax) }),
+    ...(massMax !== null && { mass_max: String(massMax) }),
+    ...(isOpen && current && { mass_min: String(current.values.massKgM * LIGHTER) }),
+  };
+}
+
+/** The section as the draft takes it: of the material in use where it can be made of it, else of the usual one. */
+export function draftSection(item: SectionItem, material: string | undefined): DraftSection {
+  const values = sectionValuesOf(item);
+  const offered = materialsFor(values);
+  const chosen = offered.find(({ id }) => id === material) ?? offered[0];
+  return { values, table: item.table, material: chosen?.id ?? '' };
+}
+
+export type Utilisation = { readonly [K in CheckKind]: number | null };
+
+/** The worst of each kind of check with another section; what cannot be evaluated says why. */
+export function utilisationWith(inputs: MemberInputs, section: DraftSection): Utilisation | string {
+  const material = materialFor(section.material);
+  if (!material) return 'no material';
+  const reading = evaluateMember({ ...inputs, section: { values: section.values, material } });
+  if (!reading.ok) return reading.faults[0]?.message ?? 'not possible';
+  const rows = reading.evaluation.checks?.rows ?? [];
+  const worst = (kind: CheckKind) => {
+    const ratios = rows.filter((row) => row.kind === kind).map(({ ratio }) => ratio);
+    return ratios.length > 0 ? Math.max(...ratios) : null;
+  };
+  return { bending: worst('bending'), shear: worst('shear'), deflection: worst('deflection') };
+}

@@ -1,0 +1,122 @@
+import { useCallback, useEffect, useMemo, useRef, useState } from 'react';
+import type { FieldFaults } from '@/features/template/faults';
+import { fieldFaults } from '@/features/template/faults';
+import type { Fault } from '@/lib/app-error';
+import { pointer } from '@/lib/pointer';
+import { evaluateMember, type MemberEvaluation, type MemberInputs } from './evaluate';
+import type { MemberView, SaveMember } from './member';
+import { putMember } from './member.api';
+import { sameFigures, toStoredResult } from './result';
+import {
+  bodyOf,
+  type Draft,
+  differencesOf,
+  toBody,
+  toDraft,
+  toInputs,
+  type WorkspaceData,
+} from './workspace';
+
+export type SaveState =
+  | { readonly kind: 'idle' }
+  | { readonly kind: 'saving' }
+  | { readonly kind: 'saved'; readonly isSame: boolean }
+  | { readonly kind: 'stale'; readonly current: MemberView }
+  | { readonly kind: 'refused'; readonly message: string; readonly faults: readonly Fault[] };
+
+/** The member's draft, what it comes to, and its saving. */
+export function useMember(data: WorkspaceData) {
+  const { template, job } = data;
+  const [member, setMember] = useState(data.member);
+  const [draft, setDraft] = useState<Draft>(() =>
+    toDraft(data.member, template, data.section, job.unitSystem),
+  );
+  const [saving, setSaving] = useState<SaveState>({ kind: 'idle' });
+  const change = useCallback((part: Partial<Draft>) => {
+    setDraft((before) => ({ ...before, ...part }));
+    // What was wrong with the last save may be put right now; a difference to somebody else's stays until it is settled.
+    setSaving((before) => (before.kind === 'stale' || before.kind === 'saving' ? before : { kind: 'idle' }));
+  }, []);
+  const inputs = useMemo(() => toInputs(draft, data), [draft, data]);
+  const live = useEvaluation(inputs);
+  const body = useMemo(
+    () => toBody(draft, template, { status: member.status, reason: member.reason }),
+    [draft, template, member],
+  );
+  const isDirty = useMemo(() => differencesOf(bodyOf(member), body).length > 0, [member, body]);
+  const [isLeaving, setLeaving] = useState(false);
+  useUnsavedGuard(isDirty && !isLeaving);
+
+  /** Sends what stands in the fields, or what is given instead, over the version that was read. */
+  async function save(sent: SaveMember = body, over = member.version): Promise<MemberView | null> {
+    setSaving({ kind: 'saving' });
+    const outcome = await putMember(job.number, member.mark, over, sent);
+    if (outcome.kind !== 'saved') {
+      setSaving(outcome);
+      return null;
+    }
+    const { result } = outcome.member;
+    const { evaluation } = live;
+    const isSame = evaluation !== null && result !== null && sameFigures(toStoredResult(evaluation), result);
+    setMember(outcome.member);
+    setSaving({ kind: 'saved', isSame });
+    return outcome.member;
+  }
+
+  /** Reads the page again, dropping what is not saved. */
+  function readAgain() {
+    setLeaving(true);
+    setTimeout(() => location.reload());
+  }
+
+  const faults: FieldFaults = useMemo(
+    () => fieldFaults(saving.kind === 'refused' && live.faults.length === 0 ? saving.faults : live.faults),
+    [saving, live.faults],
+  );
+  return { member, draft, change, inputs, live, body, isDirty, saving, save, faults, readAgain };
+}
+
+export interface Live {
+  /** Null where the inputs fail. */
+  readonly evaluation: MemberEvaluation | null;
+  /** The last one that held, to be drawn dashed while the inputs fail. */
+  readonly lastGood: MemberEvaluation | null;
+  readonly faults: readonly Fault[];
+}
+
+const NONE: readonly Fault[] = [];
+
+function useEvaluation(inputs: MemberInputs): Live {
+  const reading = useMemo(() => evaluateMember(inputs), [inputs]);
+  const lastGood = useRef<MemberEvaluation | null>(null);
+  const evaluation = reading.ok && reading.evaluation.proof.proven ? reading.evaluation : null;
+  useEffect(() => {
+    if (evaluation) lastGood.current = evaluation;
+  }, [evaluation]);
+  const faults = useMemo(
+    () =>
+      reading.ok
+        ? evaluation
+          ? NONE
+          : [
+              {
+                pointer: '',
+                code: 'unproven',
+                message: 'The two methods do not agree: there is no result that can be trusted.',
+              },
+            ]
+        : reading.faults.map(({ path, code, message }) => ({ pointer: pointer(path), code, message })),
+    [reading, evaluation],
+  );
+  return { evaluation, lastGood: evaluation ?? lastGood.current, faults };
+}
+
+/** The browser asks before a page with unsaved changes is left. */
+function useUnsavedGuard(isDirty: boolean) {
+  useEffect(() => {
+    if (!isDirty) return;
+    const ask = (event: BeforeUnloadEvent) => event.preventDefault();
+    addEventListener('beforeunload', ask);
+    return () => removeEventListener('beforeunload', ask);
+  }, [isDirty]);
+}

@@ -1,13 +1,17 @@
 import { type DerivationStep, type DisplayUnit, derive } from '@/engine/derivation';
+import type { Redundant } from '@/engine/model';
 import { toSolveAnswer } from '@/features/beam/solve';
 import type { TemplateEvaluation } from './evaluate';
 import type { EvaluateAnswer } from './request';
 
-/** The worked derivation of an evaluation, with the template's letters. */
-export const derivationOf = ({ beam, instance }: TemplateEvaluation): DerivationStep[] =>
+/** The worked derivation of an evaluation, with the template's letters; with its own redundants unless others are given. */
+export const derivationOf = (
+  { beam, instance }: TemplateEvaluation,
+  redundants: readonly Redundant[] | undefined = instance.beam.redundants,
+): DerivationStep[] =>
   derive({
     beam,
-    redundants: instance.beam.redundants,
+    redundants,
     names: { lengths: instance.dimensions, loads: instance.loadNames },
   });
 

@@ -1,0 +1,69 @@
+import { useMemo } from 'react';
+import { ElevationStrip, type ElevationStripProps } from '@/components/drawing/ElevationStrip';
+import { DRAWING_FORMATS } from '@/components/drawing/quantity-format';
+import { StationTable } from '@/components/drawing/StationTable';
+import type { Solution } from '@/engine/beam';
+import type { Beam } from '@/engine/model';
+import type { UnitSystemName } from '@/engine/quantity';
+import type { Instance } from '@/engine/template';
+import { drawnName } from './names';
+
+type Named = Pick<Instance, 'dimensions' | 'loadNames'>;
+
+interface BeamResultsProps
+  extends Pick<ElevationStripProps, 'depth' | 'envelopes' | 'reactions' | 'deflectionLimit' | 'width'> {
+  readonly beam: Beam;
+  readonly instance: Named;
+  /** Null where inputs fail: then `beam` is the last good one, drawn dashed and without results. */
+  readonly solution: Pick<Solution, 'diagrams' | 'extremes' | 'contraflexure' | 'reactions'> | null;
+  readonly system: UnitSystemName;
+  /** Why nothing is drawn: "Not drawn: the span is 0." */
+  readonly notDrawn?: string | undefined;
+  /** Called with a parameter's symbol when its figure on the drawing is pressed. */
+  readonly onEdit?: ((symbol: string) => void) | undefined;
+}
+
+/** The member with its diagrams, named in the template's letters, and the same as a table. */
+export function BeamResults({
+  beam,
+  instance,
+  solution,
+  system,
+  notDrawn,
+  onEdit,
+  ...more
+}: BeamResultsProps) {
+  const format = DRAWING_FORMATS[system];
+  const symbols = useMemo(() => symbolsOf(instance), [instance]);
+  const edit = onEdit && ((drawn: string) => onEdit(symbolOf(instance, drawn)));
+  return (
+    <>
+      <ElevationStrip
+        {...more}
+        beam={beam}
+        solution={solution}
+        symbols={symbols}
+        format={format}
+        onEditFigure={solution ? edit : undefined}
+        dashed={solution === null}
+        notDrawn={notDrawn}
+      />
+      {solution && (
+        <div className="px-(--pad) pb-10">
+          <StationTable beam={beam} solution={solution} envelopes={more.envelopes} format={format} />
+        </div>
+      )}
+    </>
+  );
+}
+
+const symbolsOf = ({ dimensions, loadNames }: Named) => ({
+  lengths: dimensions.map(({ from, to, tex }) => ({ from, to, symbol: drawnName(tex), editable: true })),
+  loads: loadNames.map(({ tex, symbol }) =>
+    tex === '' ? undefined : { symbol: drawnName(tex), ...(symbol !== '' && { edits: symbol }) },
+  ),
+});
+
+/** A length's figure gives the letter that is drawn; a load's gives its symbol. */
+const symbolOf = ({ dimensions }: Named, drawn: string): string =>
+  dimensions.find(({ tex }) => drawnName(tex) === drawn)?.symbol ?? drawn;

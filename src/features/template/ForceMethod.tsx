@@ -1,0 +1,94 @@
+import { useMemo, useRef } from 'react';
+import { forceMethodPictures } from '@/components/drawing/force-method-pictures';
+import { PictureEquation } from '@/components/drawing/PictureEquation';
+import { ZoneHeading } from '@/components/ui/ZoneHeading';
+import { forceMethod, type Solution } from '@/engine/beam';
+import { type Beam, checkRedundants, type Redundant } from '@/engine/model';
+import type { Instance } from '@/engine/template';
+import { Derivation } from './Derivation';
+import { RedundantChoice } from './RedundantChoice';
+import { type Release, releaseKey, toRedundant, toRelease } from './release';
+import { useLater, useNear } from './use-live';
+import { stepTex, type WorkedSteps } from './worked';
+
+/** A beam that was solved, with the letters of its template. */
+export interface SolvedCase {
+  readonly beam: Beam;
+  readonly instance: Pick<Instance, 'dimensions' | 'loadNames'>;
+  readonly solution: Solution;
+}
+
+interface ForceMethodProps {
+  /** Changes when the hand rests; a new object is a new case. */
+  readonly solved: SolvedCase;
+  /** What the person released; null for the template's own choice. */
+  readonly releases: readonly Release[] | null;
+  readonly onChoose: (releases: readonly Release[]) => void;
+  /** Shown until the script that works them is here. */
+  readonly initial: WorkedSteps;
+  /** Letters of the two zones. */
+  readonly letters?: readonly [string, string];
+}
+
+const loadKit = () => import('./derivation-kit');
+
+/** The choice of redundant, and compatibility worked with it. */
+export function ForceMethod({ solved, releases, onChoose, initial, letters = ['C', 'D'] }: ForceMethodProps) {
+  const host = useRef<HTMLDivElement>(null);
+  const kit = useLater(loadKit, useNear(host));
+  const { beam, solution } = solved;
+  const redundants = useMemo(() => redundantsOf(solved, releases), [solved, releases]);
+  const pictures = useMemo(
+    () => forceMethodPictures(beam, forceMethod(beam, redundants), solution),
+    [beam, solution, redundants],
+  );
+  const worked = useMemo(() => kit && work(kit, solved, redundants), [kit, solved, redundants]);
+  const shown = worked ?? initial;
+  const chosen = releaseKey(redundants.flatMap((one) => toRelease(beam, one) ?? []));
+  return (
+    <div ref={host}>
+      <ZoneHeading
+        letter={letters[0]}
+        note={beam.degree > 0 ? 'Every choice gives the same answer.' : undefined}
+      >
+        Redundant
+      </ZoneHeading>
+      <RedundantChoice beam={beam} solution={solution} chosen={chosen} onChoose={onChoose} />
+      <div className="mt-20">
+        <ZoneHeading letter={letters[1]} note="With these numbers">
+          {beam.degree > 0 ? 'Compatibility, worked' : 'Worked'}
+        </ZoneHeading>
+        {beam.degree > 0 && (
+          <PictureEquation
+            {...pictures}
+            label="The released beam under the loads, and each redundant times its unit case, add up to the member as built."
+          />
+        )}
+        <Derivation steps={shown.steps} formulas={shown.formulas} />
+      </div>
+    </div>
+  );
+}
+
+/** What is released: the person's choice where it is admissible still, else the template's. */
+function redundantsOf({ beam, solution }: SolvedCase, releases: readonly Release[] | null): Redundant[] {
+  const own = solution.forceMethod.redundants;
+  if (releases === null) return own;
+  const asked = releases.map((release) => toRedundant(beam, release));
+  return checkRedundants(beam, asked).length === 0 ? asked : own;
+}
+
+type Kit = Awaited<ReturnType<typeof loadKit>>;
+
+function work(
+  { derive, setTex }: Kit,
+  { beam, instance }: SolvedCase,
+  redundants: readonly Redundant[],
+): WorkedSteps {
+  const steps = derive({
+    beam,
+    redundants,
+    names: { lengths: instance.dimensions, loads: instance.loadNames },
+  });
+  return { steps, formulas: steps.map((step) => setTex(stepTex(step))) };
+}

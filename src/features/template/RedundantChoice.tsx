@@ -1,0 +1,123 @@
+import { useMemo } from 'react';
+import { forceMethodPictures, redundantName } from '@/components/drawing/force-method-pictures';
+import { MechanismSketch } from '@/components/drawing/MechanismSketch';
+import { RichHtml } from '@/components/drawing/marks/RichHtml';
+import { Schematic } from '@/components/drawing/Schematic';
+import { forceMethod, type Solution } from '@/engine/beam';
+import type { Beam, Redundant } from '@/engine/model';
+import { type BarredChoice, type Release, type ReleaseChoice, releaseChoices } from './release';
+
+interface RedundantChoiceProps {
+  readonly beam: Beam;
+  readonly solution: Pick<Solution, 'diagrams'>;
+  /** The key of the set in use. */
+  readonly chosen: string;
+  readonly onChoose: (releases: readonly Release[]) => void;
+}
+
+/** Every set of redundants as a card: what is taken away, and how the beam that is left sags. */
+export function RedundantChoice({ beam, solution, chosen, onChoose }: RedundantChoiceProps) {
+  const { open, barred } = useMemo(() => releaseChoices(beam), [beam]);
+  if (open.length === 0)
+    return (
+      <p className="text-ink-2">
+        Equilibrium alone finds every reaction: there is nothing to release, and no compatibility to work.
+      </p>
+    );
+  return (
+    <fieldset className="grid grid-cols-2 border-t border-l border-ink max-md:grid-cols-1">
+      <legend className="sr-only">Redundant to release</legend>
+      {open.map((choice) => (
+        <OpenCard
+          key={choice.key}
+          beam={beam}
+          solution={solution}
+          choice={choice}
+          isChosen={choice.key === chosen}
+          onChoose={() => onChoose(choice.releases)}
+        />
+      ))}
+      {barred.map((choice) => (
+        <BarredCard key={choice.key} beam={beam} choice={choice} />
+      ))}
+    </fieldset>
+  );
+}
+
+const CARD =
+  'grid min-h-44 grid-cols-[auto_minmax(0,1fr)] content-start items-start gap-x-9 gap-y-2 border-r border-b border-ink px-12 pt-9 pb-10';
+const DRAWING = 'col-span-2 mt-4 [&_svg]:h-auto [&_svg]:max-w-full';
+
+interface OpenProps extends Omit<RedundantChoiceProps, 'chosen' | 'onChoose'> {
+  readonly choice: ReleaseChoice;
+  readonly isChosen: boolean;
+  readonly onChoose: () => void;
+}
+
+function OpenCard({ beam, solution, choice, isChosen, onChoose }: OpenProps) {
+  const { redundants } = choice;
+  const picture = useMemo(
+    () => forceMethodPictures(beam, forceMethod(beam, redundants), solution).released,
+    [beam, redundants, solution],
+  );
+  const { caption: _, ...drawing } = picture;
+  return (
+    <label className={`cursor-pointer hover:bg-paper-2 ${CARD} ${isChosen ? 'bg-paper-2' : ''}`}>
+      <span className="choice min-h-20!">
+        <input type="radio" name="release" checked={isChosen} onChange={onChoose} />
+      </span>
+      <span>
+        <b className="font-semibold">
+          <RichHtml text={titleOf(beam, redundants)} />
+        </b>
+        <span className="block text-schedule text-ink-2">{saysOf(beam, redundants)}</span>
+      </span>
+      <span className={DRAWING}>
+        <Schematic {...drawing} width={318} />
+      </span>
+    </label>
+  );
+}
+
+function BarredCard({ beam, choice }: { readonly beam: Beam; readonly choice: BarredChoice }) {
+  const { redundants, reason, motion } = choice;
+  return (
+    <div className={`hatch-off ${CARD}`}>
+      <span className="choice min-h-20!">
+        <input type="radio" disabled aria-label={`${plainTitle(beam, redundants)}: cannot be released`} />
+      </span>
+      <span className="bg-paper px-2">
+        <b className="font-semibold text-ink-2">
+          <RichHtml text={titleOf(beam, redundants)} />
+        </b>
+        <span className="block text-schedule text-ink-2">{reason}</span>
+      </span>
+      {motion && (
+        <span className={DRAWING}>
+          <MechanismSketch beam={beam} motion={motion} label="How the beam would move" width={318} />
+        </span>
+      )}
+    </div>
+  );
+}
+
+const KIND = { vertical: 'Reaction', rotation: 'Fixing moment', moment: 'Moment' } as const;
+
+const titleOf = (beam: Beam, redundants: readonly Redundant[]): string =>
+  redundants.map((one) => `${KIND[one.component]} ${redundantName(beam, one).symbol}`).join(' and ');
+
+const plainTitle = (beam: Beam, redundants: readonly Redundant[]): string =>
+  titleOf(beam, redundants).replaceAll(/[_{}]/g, '');
+
+/** "Take the support at B away." */
+function saysOf(beam: Beam, redundants: readonly Redundant[]): string {
+  return redundants
+    .map((one) => {
+      const { letter } = redundantName(beam, one);
+      if (one.component === 'vertical') return `Take the support at ${letter} away.`;
+      return one.component === 'rotation'
+        ? `Let the beam turn at ${letter}.`
+        : `Cut the beam over ${letter}: a hinge.`;
+    })
+    .join(' ');
+}

@@ -1,0 +1,54 @@
+import { QuantityField } from '@/components/ui/QuantityField';
+import type { UnitSystemName } from '@/engine/quantity';
+import { formatQuantity } from '@/engine/quantity';
+import { defaultEi, type Template } from '@/engine/template';
+import type { PageValues, PickedSection } from './page';
+import { SectionPick } from './SectionPick';
+import { unitsOffered } from './units';
+
+interface StiffnessFieldsProps {
+  readonly template: Template;
+  readonly values: Pick<PageValues, 'ei' | 'section'>;
+  readonly system: UnitSystemName;
+  readonly fault: string | undefined;
+  readonly sectionFault: string | null;
+  readonly onChange: (change: Partial<PageValues>) => void;
+}
+
+/** EI as a number of its own, or from a section: one of the two. */
+export function StiffnessFields(props: StiffnessFieldsProps) {
+  const { template, values, system, fault, sectionFault, onChange } = props;
+  const { section, ei } = values;
+  const own = formatQuantity(defaultEi(template), ei.unit);
+  const affects = template.stiffness.affects.join(', ');
+  const locked = section ? `from ${section.values.designation}, ${section.materialName}` : undefined;
+  const shown = section ? { text: plainNumber(section, ei.unit), unit: ei.unit } : ei;
+  return (
+    <>
+      <div data-symbol="EI">
+        <QuantityField
+          symbol="EI"
+          label="Stiffness"
+          dimension="bending_stiffness"
+          entry={shown.text === '' ? { ...shown, text: stripUnit(own) } : shown}
+          units={unitsOffered('bending_stiffness', ei.unit)}
+          locked={locked}
+          error={fault}
+          help={`Changes ${affects}.`}
+          onChange={(entry) => onChange({ ei: entry })}
+        />
+      </div>
+      <SectionPick
+        section={section}
+        system={system}
+        fault={sectionFault}
+        onPick={(picked: PickedSection | null) => onChange({ section: picked })}
+      />
+    </>
+  );
+}
+
+const stripUnit = (text: string): string => text.split('\u00a0')[0] ?? text;
+
+const plainNumber = ({ resolved }: PickedSection, unit: string): string =>
+  stripUnit(formatQuantity(resolved.ei, unit, { significant: 4 }));

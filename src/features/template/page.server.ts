@@ -1,0 +1,125 @@
+import { type Tenant, withPractice } from '@/db/tenancy';
+import { checkRedundants } from '@/engine/model';
+import type { UnitSystemName } from '@/engine/quantity';
+import { materialFor } from '@/engine/section';
+import type { Template } from '@/engine/template';
+import { may, type Person } from '@/features/account/permission';
+import { chooseSection } from '@/features/section/choose.server';
+import { AppError } from '@/lib/app-error';
+import { OWN_STIFFNESS, readStiffness, readValues, type Stiffness } from './address';
+import { derivationOf } from './answer';
+import { toProofLines } from './lines';
+import { dayText, evaluatePage, type HistoryLine, type PickedSection, type TemplatePageData } from './page';
+import { toRaw } from './raw';
+import { readReleases, toRedundant } from './release';
+import { pickSection } from './section-pick';
+import { readTemplate, type TemplateRead } from './template.server';
+import { setTex } from './tex';
+import { stepTex } from './worked';
+
+type Viewer = Person & Tenant & { readonly practiceName: string; readonly unitSystem: UnitSystemName };
+
+/** A template's page at the values of its address. */
+export async function readTemplatePage(
+  viewer: Viewer,
+  key: { readonly slug: string; readonly number?: number | undefined },
+  query: URLSearchParams,
+): Promise<TemplatePageData> {
+  const read = await readTemplate(viewer, key);
+  const { template, row } = read;
+  const stiffness = readStiffness(query);
+  const { section, fault } = await sectionOf(viewer, stiffness);
+  const asked = readReleases(query.get('release') ?? '');
+  const releases = asked.length > 0 ? asked : null;
+  const system = viewer.unitSystem;
+  const parameters = readValues(template, query);
+  return {
+    practice: viewer.practiceName,
+    system,
+    row,
+    template,
+    history: read.history.map(toHistoryLine),
+    proof: toProofLines(template, read.proof, system),
+    engineVersion: read.engineVersion,
+    formulas: formulasOf(template),
+    parameters,
+    ei: stiffness.ei,
+    section,
+    sectionFault: fault,
+    releases,
+    worked: workedAt(template, parameters, { ...stiffness, section }, releases, system),
+    degree: read.schematic.beam.degree,
+    barred: barredFor(viewer, row.state),
+  };
+}
+
+const toHistoryLine = (line: TemplateRead['history'][number]): HistoryLine => ({
+  revision: String(line.number),
+  date: dayText(line.date),
+  by: initialsOf(line.author),
+  checked: line.reviewer === null ? undefined : initialsOf(line.reviewer),
+  change: line.changeNote,
+});
+
+const initialsOf = (name: string): string =>
+  name
+    .split(/\s+/)
+    .map((word) => word.charAt(0))
+    .join('');
+
+async function sectionOf(
+  viewer: Viewer,
+  { section: designation, table, material: id }: Stiffness,
+): Promise<{ section: PickedSection | null; fault: string | null }> {
+  if (designation === '') return { section: null, fault: null };
+  const material = materialFor(id);
+  if (!material) return { section: null, fault: `There is no material “${id}”. Choose the section again.` };
+  try {
+    const key = { designation, table: table === '' ? undefined : table };
+    const found = await withPractice(viewer, (tx) => chooseSection(tx, viewer.practiceId, key));
+    const pick = pickSection(found.table, found.values, material);
+    return pick.ok ? { section: pick.section, fault: null } : { section: null, fault: pick.message };
+  } catch (error) {
+    if (error instanceof AppError && error.code === 'invalid') return { section: null, fault: error.message };
+    throw error;
+  }
+}
+
+/** Each formula of the page that does not change with the values, set once. */
+function formulasOf({ rules, results }: Template): Record<string, string> {
+  const texts = [
+    ...rules.flatMap(({ shown }) => (shown ? [shown.tex] : [])),
+    ...results.map(({ tex, formula }) => `${tex} = ${formula}`),
+  ];
+  return Object.fromEntries(texts.map((tex) => [tex, setTex(tex, false)]));
+}
+
+/** The derivation at the address's values, or at the defaults where those fail. */
+function workedAt(
+  template: Template,
+  parameters: Readonly<Record<string, unknown>>,
+  stiffness: Omit<Stiffness, 'section'> & { section: PickedSection | null },
+  releases: TemplatePageData['releases'],
+  system: UnitSystemName,
+) {
+  const at = (given: Readonly<Record<string, unknown>>, ei: string, section: PickedSection | null) =>
+    evaluatePage(
+      template,
+      { raw: toRaw(template, given, { system }), ei: { text: ei, unit: '' }, section },
+      system,
+    );
+  const asked = at(parameters, stiffness.ei, stiffness.section);
+  const outcome = asked.ok ? asked : at({}, OWN_STIFFNESS.ei, null);
+  if (!outcome.ok) return { steps: [], formulas: [] };
+  const { evaluation } = outcome;
+  const redundants = releases?.map((release) => toRedundant(evaluation.beam, release));
+  const isAdmissible = redundants && checkRedundants(evaluation.beam, redundants).length === 0;
+  const steps = derivationOf(evaluation, isAdmissible ? redundants : undefined);
+  return { steps, formulas: steps.map((step) => setTex(stepTex(step))) };
+}
+
+function barredFor(viewer: Viewer, state: TemplateRead['row']['state']): string | null {
+  if (state === 'draft' || state === 'in_review') return 'Not issued: cannot be used yet.';
+  if (state !== 'issued') return `This revision is ${state}: it is not placed in new members.`;
+  return may(viewer, 'member.edit', { access: 'practice' }) ? null : 'Members are placed by engineers.';
+}

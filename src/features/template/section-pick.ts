@@ -1,0 +1,25 @@
+import { MATERIALS, type Material } from '@/engine/section';
+import { resolveSection, type SectionValues } from '@/features/section/resolve';
+import type { PickedSection } from './page';
+
+/** What a section may be made of, the usual one first. */
+export const materialsFor = ({ dimensions }: Pick<SectionValues, 'dimensions'>): readonly Material[] => {
+  const isTimber = dimensions.shape === 'rectangle';
+  return MATERIALS.filter(({ kind }) => (kind !== 'steel') === isTimber);
+};
+
+export type Pick =
+  | { readonly ok: true; readonly section: PickedSection }
+  | { readonly ok: false; readonly message: string };
+
+/** A section of a table, made of a material. */
+export function pickSection(table: string, values: SectionValues, material: Material): Pick {
+  const resolution = resolveSection(values, material);
+  if (!resolution.ok) return resolution;
+  const { designation, ei, selfWeight, depth } = resolution.section;
+  const resolved = { designation, ei, selfWeight, depth };
+  return {
+    ok: true,
+    section: { table, values, material: material.id, materialName: material.name, resolved },
+  };
+}

@@ -89,6 +89,10 @@ describe('a designation', () => {
     expect([json.total, json.next]).toEqual([json.items.length, null]);
   });
 
+  test('that exists outside the range brings nothing instead', async () => {
+    expect((await get({ q: 'w12x26', depth_max: '100' })).json.total).toBe(0);
+  });
+
   test('like no other brings nothing', async () => {
     expect((await get({ q: 'qqqqq 98765' })).json).toEqual({ items: [], next: null, total: 0 });
   });

@@ -17,6 +17,8 @@ export interface ChosenSection {
   readonly sha256: string;
   readonly documentId: string;
   readonly values: SectionValues;
+  /** Columns that were computed from the dimensions, not supplied. */
+  readonly computed: readonly string[];
 }
 
 const COLUMNS = {
@@ -28,6 +30,7 @@ const COLUMNS = {
   revisionId: section.revisionId,
   sha256: revision.sha256,
   documentId: revision.documentId,
+  computed: section.computed,
   values: {
     designation: section.designation,
     dimensions: section.dimensions,

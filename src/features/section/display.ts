@@ -103,9 +103,15 @@ export const axesOfTable = (
 export const symbolOf = (field: SectionField, axes: AxisLetters): string =>
   FIELD_WORDS[field].symbol.replace('major', axes.major).replace('minor', axes.minor);
 
-/** The unit on screen, its power as rich text: cm^{4}. */
+/** The unit in running text: cm⁴. */
 export const unitOf = (field: SectionField, system: UnitSystemName): string =>
   unitText(FIELD_WORDS[field][system].unit);
+
+const RAISED = '⁰¹²³⁴⁵⁶⁷⁸⁹';
+
+/** The unit as rich text, cm^{4}: the typeface has no raised 4 of its own. */
+export const richUnitOf = (field: SectionField, system: UnitSystemName): string =>
+  unitOf(field, system).replace(/[⁰¹²³⁴⁵⁶⁷⁸⁹]/, (digit) => `^{${RAISED.indexOf(digit)}}`);
 
 /** A value in the field's own unit, in the unit that is shown. */
 export function toShown(field: SectionField, value: number, system: UnitSystemName): number {

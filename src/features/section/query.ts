@@ -197,16 +197,20 @@ export function nearestDesignations<T extends { readonly designation: string }>(
 
 /**
  * The items that answer a query, in its order: an exact designation first, then as sorted, else the better answer
- * before the lighter section. Ties go by designation, so that the order is always the same. Where none answers, the
- * nearest are offered.
+ * before the lighter section. Ties go by designation, so that the order is always the same. Where nothing at all is
+ * called as was typed, the nearest are offered.
  */
 export function selectSections<T extends Searchable>(items: readonly T[], query: SectionQuery): T[] {
-  const met = items.filter((item) => meetsQuery(item, query));
-  const ranked = met.flatMap((item) => {
+  const called = items.flatMap((item) => {
     const rank = query.q === '' ? 1 : designationRank(query.q, item.designation);
     return rank === null ? [] : [{ item, rank }];
   });
-  if (ranked.length === 0) return query.q === '' ? [] : nearestDesignations(query.q, met);
+  if (called.length === 0)
+    return nearestDesignations(
+      query.q,
+      items.filter((item) => meetsQuery(item, query)),
+    );
+  const ranked = called.filter(({ item }) => meetsQuery(item, query));
   const order = (rank: number) => (query.sort ? Math.min(rank, 1) : rank);
   ranked.sort(
     (a, b) =>

@@ -175,7 +175,8 @@ export async function searchRows(
     pageOf(tx, place ? and(where, after(place, order)) : where, order, limit + 1),
   ]);
   const total = counted?.total ?? 0;
-  if (total === 0 && query.q !== '') return nearest(tx, met, query.q, limit);
+  if (total === 0 && query.q !== '' && !(await isCalled(tx, practiceId, rank)))
+    return nearest(tx, met, query.q, limit);
   const shown = rows.slice(0, limit);
   const last = shown.at(-1);
   const next =
@@ -183,6 +184,14 @@ export async function searchRows(
       ? ([last.grade, Number.isFinite(last.value) ? last.value : null, last.key, last.table] as const)
       : null;
   return { items: shown.map(({ grade: _g, value: _v, key: _k, ...row }) => toItem(row)), next, total };
+}
+
+/** Whether any section is called so, whatever else is asked of it. */
+async function isCalled(tx: Tx, practiceId: string, rank: SQL): Promise<boolean> {
+  const [found] = await selectRows(tx, {})
+    .where(and(eq(section.practiceId, practiceId), eq(revision.state, 'issued'), sql`${rank} is not null`))
+    .limit(1);
+  return found !== undefined;
 }
 
 /** Nobody is left with nothing for a slip of the finger. */

@@ -1,0 +1,84 @@
+import { RichHtml } from '@/components/drawing/marks/RichHtml';
+import { ZoneHeading } from '@/components/ui/ZoneHeading';
+import { formatNumber, type UnitSystemName } from '@/engine/quantity';
+import { axesOf, FIELD_WORDS, figureOf, richUnitOf, shownName, symbolOf } from './display';
+import { measureOf, type SectionField } from './query';
+import type { SectionItem } from './section';
+
+interface ComparisonProps {
+  readonly pinned: readonly SectionItem[];
+  readonly system: UnitSystemName;
+}
+
+const COMPARED: readonly SectionField[] = [
+  'mass_kg_m',
+  'depth_mm',
+  'area_cm2',
+  'w_pl_cm3',
+  'i_major_cm4',
+  'r_minor_cm',
+];
+
+/** "+18 %": how much more than the first. */
+function difference(item: SectionItem, first: SectionItem, field: SectionField): string {
+  const [value, from] = [measureOf(item, field), measureOf(first, field)];
+  if (value === null || from === null) return '';
+  const percent = formatNumber((value / from - 1) * 100);
+  return `${value >= from ? `+${percent}` : percent} %`;
+}
+
+/** What the pinned sections are, and by how much they differ from the first. */
+export function Comparison({ pinned, system }: ComparisonProps) {
+  const [first, second] = pinned;
+  return (
+    <section className="zone">
+      <ZoneHeading letter="B">Compared with 1</ZoneHeading>
+      {first && second ? (
+        <table className="schedule">
+          <thead>
+            <tr>
+              <td />
+              {pinned.map((item, i) => (
+                <th key={`${item.table} ${item.designation}`} scope="col" className="figure">
+                  {i + 1}
+                  <small className="whitespace-normal">{shownName(item.designation)}</small>
+                </th>
+              ))}
+            </tr>
+          </thead>
+          <tbody>
+            {COMPARED.map((field) => (
+              <tr key={field}>
+                <th scope="row">
+                  <FieldName field={field} system={system} />
+                </th>
+                {pinned.map((item, i) => (
+                  <td key={`${item.table} ${item.designation}`} className="figure">
+                    {figureOf(item, field, system)}
+                    {i > 0 && <small>{difference(item, first, field)}</small>}
+                  </td>
+                ))}
+              </tr>
+            ))}
+          </tbody>
+        </table>
+      ) : (
+        <p className="text-ink-2">Pin two sections or more to compare them.</p>
+      )}
+    </section>
+  );
+}
+
+function FieldName({ field, system }: { field: SectionField; system: UnitSystemName }) {
+  const words = field === 'mass_kg_m' ? 'Mass' : field === 'depth_mm' ? 'Depth' : null;
+  return (
+    <>
+      {words ?? (
+        <i title={FIELD_WORDS[field].name}>
+          <RichHtml text={symbolOf(field, axesOf(system))} />
+        </i>
+      )}
+      , <RichHtml text={richUnitOf(field, system)} />
+    </>
+  );
+}

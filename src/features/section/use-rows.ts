@@ -1,0 +1,51 @@
+import { useVirtualizer } from '@tanstack/react-virtual';
+import { useEffect, useRef, useState } from 'react';
+
+const ROW = { wide: 28, phone: 58 };
+const HEAD = 58;
+const FIRST_PAINT = { width: 1200, height: 422 };
+
+function useIsPhone(): boolean {
+  const [isPhone, setIsPhone] = useState(false);
+  useEffect(() => {
+    const media = matchMedia('(max-width: 760px)');
+    const follow = () => setIsPhone(media.matches);
+    follow();
+    media.addEventListener('change', follow);
+    return () => media.removeEventListener('change', follow);
+  }, []);
+  return isPhone;
+}
+
+/** Which rows of a long schedule are drawn, and which of them are in view. */
+export function useRows(count: number) {
+  const scroller = useRef<HTMLDivElement>(null);
+  const isPhone = useIsPhone();
+  const row = isPhone ? ROW.phone : ROW.wide;
+  const head = isPhone ? 0 : HEAD;
+  const virtualizer = useVirtualizer({
+    count,
+    getScrollElement: () => scroller.current,
+    estimateSize: () => row,
+    overscan: 12,
+    scrollPaddingEnd: head,
+    initialRect: FIRST_PAINT,
+  });
+  // biome-ignore lint/correctness/useExhaustiveDependencies: another height of row measures anew
+  useEffect(() => virtualizer.measure(), [row]);
+  const height = virtualizer.scrollRect?.height ?? FIRST_PAINT.height;
+  const first = Math.min(Math.round((virtualizer.scrollOffset ?? 0) / row), Math.max(0, count - 1));
+  const size = Math.max(1, Math.floor((height - head) / row));
+  const drawn = virtualizer.getVirtualItems();
+  return {
+    scroller,
+    drawn,
+    before: drawn[0]?.start ?? 0,
+    after: virtualizer.getTotalSize() - (drawn.at(-1)?.end ?? 0),
+    first,
+    size,
+    height,
+    show: (index: number) => virtualizer.scrollToIndex(index),
+    startAt: (index: number) => virtualizer.scrollToOffset(index * row),
+  };
+}

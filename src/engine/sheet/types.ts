@@ -3,7 +3,7 @@ import type { CheckRow, Combination, Finding } from '../check/index';
 import type { DerivationStep } from '../derivation/index';
 import type { Beam } from '../model/index';
 import type { UnitSystemName } from '../quantity/index';
-import type { Dimensioned, NamedLoad, Parameter, RuleOutcome } from '../template/index';
+import type { Dimensioned, NamedLoad, RuleOutcome, Template } from '../template/index';
 
 /** What a sheet is made from: what was stored with a member, and the documents that it pins. SI, the engine's signs. */
 export type SheetInput = {
@@ -15,7 +15,7 @@ export type SheetInput = {
     readonly reference: string;
     readonly name: string;
     readonly revision: number;
-    readonly parameters: readonly Parameter[];
+    readonly parameters: Template['parameters'];
   };
   /** By symbol, as typed. */
   readonly parameters: Readonly<Record<string, unknown>>;

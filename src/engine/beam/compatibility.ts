@@ -8,6 +8,9 @@ import { curveOf, forcesOf } from './state';
 import { holdingOf, type Superposed, yielding } from './superpose';
 import { addWorkOn } from './virtual-work';
 
+/** Part of a prescribed movement that may be the rounding of the number it is given by, and room for a few of them. */
+const GIVEN = 2 ** -49;
+
 /** F·X + Δ₀ = Δ_imposed, solved. */
 export type Compatibility = Superposed & { gaps: Wide[]; imposed: Wide[] };
 
@@ -35,7 +38,7 @@ export function solveCompatibility(
     sum.subtract(imposed[i]!);
     return sum.total().negated();
   });
-  const values = closing(flexibility, missing, actions);
+  const values = closing(flexibility, missing, actions, apart(flexibility, imposed, moved));
   return { actions, released, values, moved, gaps, imposed };
 }
 
@@ -48,18 +51,35 @@ function imposedOf({ beam, redundants }: Flexibility, moved: boolean): Wide[] {
   });
 }
 
-/** The redundants that make the missing movements, exactly zero where they come out as nothing but rounding. */
+/** What would close the gaps if none of the prescribed movements undid another: Σ |r · movement|, and the gap's own. */
+function apart({ factors, reactions, units }: Flexibility, imposed: readonly Wide[], moved: boolean): Wide[] {
+  const given = reactions.map(({ restraint }) => yielding(restraint, Wide.ZERO, moved).hi);
+  const sizes = units.map((unit, i) =>
+    given.reduce(
+      (sum, movement, c) => sum + Math.abs(unit.reactions[c]!.hi * movement),
+      Math.abs(imposed[i]!.hi),
+    ),
+  );
+  return sizes.some((size) => size > 0) ? factors.solve(sizes.map(Wide.of)) : sizes.map(() => Wide.ZERO);
+}
+
+/**
+ * The redundants that make the missing movements, exactly zero where they come out as nothing but rounding: beside the
+ * forces, or beside what the prescribed movements would ask for one by one, as where a beam sinks or turns as a whole.
+ */
 function closing(
   { mesh, factors, redundants }: Flexibility,
   missing: readonly Wide[],
   actions: Actions,
+  moving: readonly Wide[],
 ): Wide[] {
   const values = factors.solve(missing);
   const isForce = (i: number) => redundants[i]!.component === 'vertical';
   const forces = values.filter((_, i) => isForce(i));
   const couples = values.filter((_, i) => !isForce(i));
   const floor = floorOf(mesh, actions, forces, couples);
-  return values.map((value, i) =>
-    Math.abs(value.hi) > (isForce(i) ? floor.force : floor.couple) ? value : Wide.ZERO,
-  );
+  return values.map((value, i) => {
+    const nothing = Math.max(isForce(i) ? floor.force : floor.couple, GIVEN * Math.abs(moving[i]!.hi));
+    return Math.abs(value.hi) > nothing ? value : Wide.ZERO;
+  });
 }

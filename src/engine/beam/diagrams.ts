@@ -1,4 +1,4 @@
-import type { Wide } from '../linear/index';
+import { Sum, type Wide } from '../linear/index';
 import { piecewise } from '../polynomial/index';
 import type { Actions } from './actions';
 import type { Mesh } from './mesh';
@@ -36,7 +36,10 @@ function pieceOf(mesh: Mesh, actions: Actions, forces: Forces, placed: Curve, k:
   const moment = [forces.moment[k]!, ...integral(shear)];
   const bending = moment.map((c) => c.times(mesh.bending[k]!));
   const [first, ...rest] = bending as [Wide, ...Wide[]];
-  const rotation = [placed.rotation[k]!, ...integral([first.plus(actions.curvature[k]!), ...rest])];
+  const bend = new Sum();
+  bend.add(first);
+  bend.add(actions.curvature[k]!);
+  const rotation = [placed.rotation[k]!, ...integral([bend.total(), ...rest])];
   const slope = rotation.map((c, j) => (shear[j] ? c.minus(shear[j].times(mesh.shearing[k]!)) : c));
   const deflection = [placed.deflection[k]!, ...integral(slope)];
   return {

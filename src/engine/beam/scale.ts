@@ -1,4 +1,4 @@
-import { largest, type Wide } from '../linear/index';
+import { largest, Wide } from '../linear/index';
 import type { Actions } from './actions';
 import type { Mesh } from './mesh';
 
@@ -8,7 +8,10 @@ import type { Mesh } from './mesh';
  */
 const NOTHING = 1e-22;
 
-/** Forces, N, and moments, N·m, that are nothing beside those that act on the beam or in it. */
+/**
+ * Forces, N, and moments, N·m, that are nothing beside those that act on the beam or in it, or that its free curvatures
+ * would make if they were wholly held.
+ */
 export type Floor = { force: number; couple: number };
 
 export function floorOf(
@@ -19,7 +22,10 @@ export function floorOf(
 ): Floor {
   const length = mesh.points.at(-1)!;
   const force = largest(forces, actions.force);
-  const couple = largest(couples, actions.couple);
+  const held = actions.curvature.map((kappa, k) =>
+    kappa.hi === 0 ? Wide.ZERO : kappa.over(mesh.bending[k]!),
+  );
+  const couple = largest(couples, actions.couple, held);
   return {
     force: NOTHING * Math.max(force, couple / length),
     couple: NOTHING * Math.max(couple, force * length),

@@ -304,3 +304,78 @@ describe('stations', () => {
     expect(right).toMatchObject({ shear: [near(-7), near(-7)], moment: [0, 0], deflection: 0 });
   });
 });
+
+describe('what rounding leaves of nothing', () => {
+  const nowhere = { value: 0, at: [0, 3.3, 10] };
+  const nothing = { max: nowhere, min: nowhere };
+
+  test('supports that turn as one body bend nothing, though their decimals are not exact', () => {
+    const { extremes, contraflexure, reactions } = solveBeam(
+      beam({
+        length: 10,
+        ei: EI,
+        supports: [
+          { ...fixedAt(0), rotation: -0.001 },
+          { ...rollerAt(3.3), rise: -0.0033 },
+          { ...fixedAt(10), rise: -0.01, rotation: -0.001 },
+        ],
+      }),
+    );
+    expect(extremes).toMatchObject({ shear: nothing, moment: nothing });
+    expect(contraflexure).toEqual([]);
+    expect(reactions.every(({ vertical, moment }) => vertical === 0 && moment === 0)).toBe(true);
+  });
+
+  test('a small settlement beside a large common one still bends the beam', () => {
+    const { extremes } = solveBeam(
+      beam({
+        length: 10,
+        ei: EI,
+        supports: [
+          { ...rollerAt(0), rise: -0.1 },
+          { ...rollerAt(5), rise: -0.1 - 1e-9 },
+          { ...rollerAt(10), rise: -0.1 },
+        ],
+      }),
+    );
+    // 3EIΔ/ℓ² at the middle support
+    expect(extremes.moment.max.value).toBeCloseTo((3 * EI * 1e-9) / 25, 9);
+  });
+
+  test('a temperature gradient that is wholly held leaves the beam straight', () => {
+    const { extremes } = solveBeam(
+      beam({
+        length: 10,
+        ei: EI,
+        supports: [fixedAt(0), fixedAt(10)],
+        loads: [{ kind: 'curvature', from: 0, to: 10, kappa: 0.0003 }],
+      }),
+    );
+    const straight = { value: 0, at: [0, 10] };
+    expect(extremes).toMatchObject({
+      moment: { max: { value: near(-EI * 0.0003), at: [0, 10] } },
+      slope: { max: straight, min: straight },
+      deflection: { max: straight, min: straight },
+    });
+  });
+
+  test('a gradient in an overhang, where it is free to bend the beam, makes no forces', () => {
+    const { extremes, contraflexure } = solveBeam(
+      beam({
+        length: 15.55,
+        ei: 1.5e6,
+        supports: [
+          { ...rollerAt(10.9), kr: 810000 },
+          fixedAt(13.4),
+          { ...rollerAt(7.6), kr: 500000 },
+          { at: 11.25, kind: 'guided' },
+          rollerAt(15.55),
+        ],
+        loads: [{ kind: 'curvature', from: 4.8, to: 6.4, kappa: 0.00012 }],
+      }),
+    );
+    const { shear, moment } = extremes;
+    expect([shear.max.value, shear.min.value, moment.max.value, moment.min.value]).toEqual([0, 0, 0, 0]);
+    expect(contraflexure).toEqual([]);
+  });
+});

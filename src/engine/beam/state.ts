@@ -1,4 +1,4 @@
-import { CANCELLED, largest, settled, Wide } from '../linear/index';
+import { CANCELLED, largest, Sum, settled, Wide } from '../linear/index';
 import { riseOf } from '../model/index';
 import type { Actions } from './actions';
 import type { Mesh } from './mesh';
@@ -54,7 +54,7 @@ export function forcesOf(mesh: Mesh, actions: Actions, { up, turn }: Holding): F
   return forces;
 }
 
-/** ψ' = M/EI + κ and v' = ψ − V/GA, integrated exactly from the left end. */
+/** ψ' = M/EI + κ and v' = ψ − V/GA, integrated exactly from the left end; what a moment wholly holds does not bend. */
 export function curveOf(mesh: Mesh, actions: Actions, { shear, moment }: Forces): Curve {
   const curve: Curve = { rotation: [Wide.ZERO], deflection: [Wide.ZERO] };
   let [rotation, deflection] = [Wide.ZERO, Wide.ZERO];
@@ -65,15 +65,25 @@ export function curveOf(mesh: Mesh, actions: Actions, { shear, moment }: Forces)
     const bend = V.times(h).times(HALF).plus(M).times(h).minus(thrice);
     const sag = V.times(h).times(SIXTH).plus(M.times(HALF)).times(h).times(h).minus(fourfold);
     const shift = V.times(h).minus(twice).times(shearing);
-    deflection = deflection
-      .plus(rotation.plus(kappa.times(h).times(HALF)).times(h))
-      .plus(sag.times(bending))
-      .minus(shift);
-    rotation = rotation.plus(bend.times(bending)).plus(kappa.times(h));
+    const turn = kappa.times(h);
+    deflection = totalOf(
+      deflection,
+      rotation.times(h),
+      turn.times(h).times(HALF),
+      sag.times(bending),
+      shift.negated(),
+    );
+    rotation = totalOf(rotation, bend.times(bending), turn);
     curve.rotation.push(rotation);
     curve.deflection.push(deflection);
   });
   return curve;
+}
+
+function totalOf(...terms: readonly Wide[]): Wide {
+  const sum = new Sum();
+  for (const term of terms) sum.add(term);
+  return sum.total();
 }
 
 /**

@@ -24,6 +24,7 @@ export function TitleStrip(props: TitleStripProps) {
       data-title-strip
       data-screen-only
       inert
+      suppressHydrationWarning
       aria-label="Title strip"
       className="fixed inset-x-0 bottom-0 z-20 flex h-54 translate-y-full items-stretch border-t-2 border-ink bg-paper transition-transform duration-120 ease-out inert:invisible data-on:translate-y-0"
     >

@@ -1,6 +1,7 @@
 import { useState } from 'react';
+import type { BlockAction } from '@/components/ui/BlockActions';
 import { Button } from '@/components/ui/Button';
-import { Field } from '@/components/ui/Field';
+import { Field, TextField } from '@/components/ui/Field';
 import { TitleBlock } from '@/components/ui/TitleBlock';
 import { TitleStrip } from '@/components/ui/TitleStrip';
 import { useKeys } from '@/components/ui/use-keys';
@@ -25,7 +26,7 @@ interface MemberBlockProps {
 /** Whose the member is, where it stands, and saving it. */
 export function MemberBlock({ data, work }: MemberBlockProps) {
   const { job, mayEdit, template } = data;
-  const { member, draft, change, body, isDirty, saving, live } = work;
+  const { member, draft, isDirty, saving } = work;
   const why = reasonNotToSave(work, mayEdit);
   const action = {
     label: saving.kind === 'saving' ? 'Saving' : 'Save',
@@ -33,61 +34,30 @@ export function MemberBlock({ data, work }: MemberBlockProps) {
     ...(why === undefined ? { onPress: () => void work.save() } : { reason: why }),
   };
   useKeys({ s: () => why === undefined && void work.save() });
-  const title = draft.title || template.name;
   const identity = {
     kind: 'Member',
+    title: draft.title || template.name,
     status: SHAPES[member.status],
     statusWord: STATUS_NAMES[member.status],
     reference: member.mark,
     revision: String(member.version),
   };
-  const status = (next: 'draft' | 'ready') => () => void work.save({ ...body, status: next, reason: '' });
-  const isReady = member.status === 'ready';
-  const step = {
-    label: member.status === 'draft' ? 'Ready for check' : 'Take back to draft',
-    ...(!mayEdit
-      ? { reason: 'Members are changed by engineers.' }
-      : isReady || member.status === 'removed' || live.evaluation?.checks
-        ? { onPress: status(member.status === 'draft' ? 'ready' : 'draft') }
-        : { reason: 'Needs a section and criteria.' }),
-  };
+  const sheet = isDirty
+    ? { label: 'Calc sheet', reason: 'Save first: the sheet prints what is stored.' }
+    : { label: 'Calc sheet', href: paths.memberSheet(job.number, member.mark) };
   return (
     <>
       <TitleBlock
         {...identity}
         org={job.name}
         jobNumber={job.number}
-        title={title}
         by={member.changed_by}
         date={day.format(new Date(member.changed_at))}
         action={action}
-        others={[
-          isDirty
-            ? { label: 'Calc sheet', reason: 'Save first: the sheet prints what is stored.' }
-            : { label: 'Calc sheet', href: paths.memberSheet(job.number, member.mark) },
-          step,
-        ]}
+        others={[sheet, statusStep(work, mayEdit)]}
       >
         <div className="col-span-6 grid gap-10">
-          {mayEdit && (
-            <>
-              <Field
-                label="Title"
-                maxLength={120}
-                value={draft.title}
-                error={work.faults.get('title')}
-                onChange={(event) => change({ title: event.target.value })}
-              />
-              <Field
-                label="Purpose"
-                maxLength={500}
-                value={draft.purpose}
-                help="What it carries, what it bears on."
-                error={work.faults.get('purpose')}
-                onChange={(event) => change({ purpose: event.target.value })}
-              />
-            </>
-          )}
+          {mayEdit && <Names work={work} />}
           <p role="status" className="text-schedule">
             {said(work)}
           </p>
@@ -101,9 +71,41 @@ export function MemberBlock({ data, work }: MemberBlockProps) {
           {member.status === 'removed' && <p className="text-schedule">Removed: {member.reason}</p>}
         </div>
       </TitleBlock>
-      <TitleStrip {...identity} title={title} action={action} />
+      <TitleStrip {...identity} action={action} />
     </>
   );
+}
+
+function Names({ work: { draft, change, faults } }: Pick<MemberBlockProps, 'work'>) {
+  return (
+    <>
+      <Field
+        label="Title"
+        maxLength={120}
+        value={draft.title}
+        error={faults.get('title')}
+        onChange={(event) => change({ title: event.target.value })}
+      />
+      <TextField
+        label="Purpose"
+        maxLength={500}
+        rows={2}
+        value={draft.purpose}
+        help="What it carries, what it bears on."
+        error={faults.get('purpose')}
+        onChange={(event) => change({ purpose: event.target.value })}
+      />
+    </>
+  );
+}
+
+/** Between draft and ready for check; a removed member comes back as a draft. */
+function statusStep({ member, body, live, save }: MemberBlockProps['work'], mayEdit: boolean): BlockAction {
+  const isDraft = member.status === 'draft';
+  const label = isDraft ? 'Ready for check' : 'Take back to draft';
+  if (!mayEdit) return { label, reason: 'Members are changed by engineers.' };
+  if (isDraft && !live.evaluation?.checks) return { label, reason: 'Needs a section and criteria.' };
+  return { label, onPress: () => void save({ ...body, status: isDraft ? 'ready' : 'draft', reason: '' }) };
 }
 
 function reasonNotToSave({ live, draft, isDirty, saving }: MemberBlockProps['work'], mayEdit: boolean) {

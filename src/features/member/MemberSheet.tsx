@@ -2,8 +2,9 @@ import { Notice } from '@/components/ui/Notice';
 import { SheetHead } from '@/components/ui/SheetHead';
 import { ZoneHeading } from '@/components/ui/ZoneHeading';
 import { LOAD_GROUP_NAMES, LOAD_GROUPS } from '@/engine/check';
+import type { Redundant } from '@/engine/model';
 import { formatUtilisation } from '@/engine/quantity';
-import { stopTitle, toCauses } from '@/features/template/faults';
+import { type Cause, stopTitle, toCauses } from '@/features/template/faults';
 import { ParameterFields } from '@/features/template/ParameterFields';
 import { RedundantChoice } from '@/features/template/RedundantChoice';
 import { releaseKey, toRedundant, toRelease } from '@/features/template/release';
@@ -12,6 +13,7 @@ import { BasisFields } from './BasisFields';
 import { BasisZone } from './BasisZone';
 import { ChecksZone } from './ChecksZone';
 import { ElevationZone } from './ElevationZone';
+import type { MemberEvaluation } from './evaluate';
 import { HistoryZone } from './HistoryZone';
 import { LoadGroupsZone, ReactionsZone } from './LoadZones';
 import { MemberBlock } from './MemberBlock';
@@ -29,80 +31,32 @@ function editField(symbol: string) {
   field?.select();
 }
 
+type Work = ReturnType<typeof useMember>;
+interface PartProps {
+  readonly data: WorkspaceData;
+  readonly work: Work;
+}
+
 /** The member's sheet: inputs, drawing, checks, section, loads, reactions, all live; what is saved is the server's. */
 export function MemberSheet({ data }: { readonly data: WorkspaceData }) {
-  const { template, job, criteria, mayEdit } = data;
-  const system = job.unitSystem;
   const work = useMember(data);
-  const { member, draft, change, live, faults, saving } = work;
-  const { evaluation } = live;
-  const causes = toCauses(template, live.faults);
-  const governing = evaluation?.checks?.rows[0];
-  const missing = !draft.section
-    ? 'Choose a section: stresses and deflections are judged with it.'
-    : 'Choose criteria: they say the combinations and the limits.';
+  const { live } = work;
+  const causes = toCauses(data.template, live.faults);
+  const system = data.job.unitSystem;
   return (
     <>
-      <SheetHead
-        trail={[
-          { label: 'Jobs', href: paths.jobs },
-          { label: `${job.number} ${job.name}`, href: paths.job(job.number) },
-        ]}
-        reference={member.mark}
-        title={draft.title || template.name}
-        facts={[
-          { label: 'Template', value: `${member.template.reference} rev ${member.template.revision}` },
-          { label: 'Section', value: draft.section?.values.designation ?? 'not chosen' },
-          {
-            label: 'Governing',
-            value: governing
-              ? `${formatUtilisation(governing.ratio)} ${governing.title.toLowerCase()}`
-              : 'not checked',
-          },
-        ]}
-      />
-      <PinNotices member={member} />
+      <Head data={data} work={work} />
+      <PinNotices member={work.member} />
       <SaveNotice
-        saving={saving}
+        saving={work.saving}
         body={work.body}
         onSettle={async (current, body) => {
           if (await work.save(body, current.version)) work.readAgain();
         }}
         onTakeTheirs={work.readAgain}
       />
-      {causes.length > 0 && (
-        <Notice tone="error" title={stopTitle(causes)}>
-          <ul className="list-disc pl-18">
-            {causes.map(({ symbol, title, message }) => (
-              <li key={title + message}>
-                {symbol ? (
-                  <button type="button" className="link min-h-24" onClick={() => editField(symbol)}>
-                    {title}
-                  </button>
-                ) : (
-                  title
-                )}
-                : {message}
-              </li>
-            ))}
-          </ul>
-        </Notice>
-      )}
-      <section aria-label="Inputs" className="border-b border-ink">
-        <fieldset disabled={!mayEdit} className="min-w-0">
-          <legend className="sr-only">Inputs</legend>
-          <ParameterFields
-            template={template}
-            raw={draft.raw}
-            system={system}
-            faults={faults}
-            groups={GROUPS}
-            onChange={(symbol, value) => change({ raw: { ...draft.raw, [symbol]: value } })}
-          >
-            <BasisFields draft={draft} criteria={criteria} faults={faults} onChange={change} />
-          </ParameterFields>
-        </fieldset>
-      </section>
+      {causes.length > 0 && <CauseNotice causes={causes} />}
+      <Inputs data={data} work={work} />
       <ElevationZone
         live={live}
         system={system}
@@ -110,46 +64,9 @@ export function MemberSheet({ data }: { readonly data: WorkspaceData }) {
         onEdit={editField}
       />
       <div className="grid grid-cols-[minmax(0,1fr)] lg:grid-cols-[minmax(0,1fr)_var(--title-column)]">
-        <div className="min-w-0">
-          <div className="grid grid-cols-[minmax(0,1fr)] min-[1380px]:grid-cols-[minmax(0,452fr)_minmax(0,584fr)] min-[1380px]:[&>*+*]:border-t-0 min-[1380px]:[&>*+*]:border-l min-[1380px]:[&>*+*]:border-ink">
-            <ChecksZone checks={evaluation?.checks ?? null} system={system} missing={missing} />
-            <SectionZone
-              section={draft.section}
-              inputs={work.inputs}
-              system={system}
-              mayEdit={mayEdit}
-              onPick={(section) => change({ section })}
-            />
-          </div>
-          <div className="border-t border-ink">
-            <LoadGroupsZone evaluation={evaluation} system={system} />
-            {evaluation && (
-              <section className="zone">
-                <ZoneHeading letter="E" note="every choice gives the same answer">
-                  Redundant
-                </ZoneHeading>
-                <fieldset disabled={!mayEdit}>
-                  <legend className="sr-only">Redundant</legend>
-                  <RedundantChoice
-                    beam={evaluation.beam}
-                    solution={evaluation.total}
-                    chosen={releaseKey(
-                      evaluation.total.forceMethod.redundants.flatMap(
-                        (one) => toRelease(evaluation.beam, one) ?? [],
-                      ),
-                    )}
-                    onChoose={(releases) =>
-                      change({ redundants: releases.map((one) => toRedundant(evaluation.beam, one)) })
-                    }
-                  />
-                </fieldset>
-              </section>
-            )}
-            <ReactionsZone evaluation={evaluation} system={system} />
-          </div>
-        </div>
+        <Zones data={data} work={work} />
         <aside className="flex min-w-0 flex-col border-ink max-lg:border-t lg:border-l">
-          <BasisZone template={template} evaluation={evaluation} system={system} />
+          <BasisZone template={data.template} evaluation={live.evaluation} system={system} />
           <HistoryZone history={data.history} />
           <div className="mt-auto">
             <MemberBlock data={data} work={work} />
@@ -157,5 +74,130 @@ export function MemberSheet({ data }: { readonly data: WorkspaceData }) {
         </aside>
       </div>
     </>
+  );
+}
+
+function Head({ data: { job, template }, work: { member, draft, live } }: PartProps) {
+  const governing = live.evaluation?.checks?.rows[0];
+  const facts = [
+    { label: 'Template', value: `${member.template.reference} rev ${member.template.revision}` },
+    { label: 'Section', value: draft.section?.values.designation ?? 'not chosen' },
+    {
+      label: 'Governing',
+      value: governing
+        ? `${formatUtilisation(governing.ratio)} ${governing.title.toLowerCase()}`
+        : 'not checked',
+    },
+  ];
+  const trail = [
+    { label: 'Jobs', href: paths.jobs },
+    { label: `${job.number} ${job.name}`, href: paths.job(job.number) },
+  ];
+  return (
+    <SheetHead trail={trail} reference={member.mark} title={draft.title || template.name} facts={facts} />
+  );
+}
+
+/** What stops the drawing, each with the way to its field. */
+function CauseNotice({ causes }: { readonly causes: readonly Cause[] }) {
+  return (
+    <Notice tone="error" title={stopTitle(causes)}>
+      <ul className="list-disc pl-18">
+        {causes.map(({ symbol, title, message }) => (
+          <li key={title + message}>
+            {symbol ? (
+              <button type="button" className="link min-h-24" onClick={() => editField(symbol)}>
+                {title}
+              </button>
+            ) : (
+              title
+            )}
+            : {message}
+          </li>
+        ))}
+      </ul>
+    </Notice>
+  );
+}
+
+function Inputs({ data, work: { draft, change, faults } }: PartProps) {
+  return (
+    <fieldset disabled={!data.mayEdit} className="min-w-0 border-b border-ink">
+      <legend className="sr-only">Inputs</legend>
+      <ParameterFields
+        template={data.template}
+        raw={draft.raw}
+        system={data.job.unitSystem}
+        faults={faults}
+        groups={GROUPS}
+        onChange={(symbol, value) => change({ raw: { ...draft.raw, [symbol]: value } })}
+      >
+        <BasisFields draft={draft} criteria={data.criteria} faults={faults} onChange={change} />
+      </ParameterFields>
+    </fieldset>
+  );
+}
+
+const WIDE =
+  'min-[1380px]:grid-cols-[minmax(0,452fr)_minmax(0,584fr)] min-[1380px]:[&>*+*]:border-t-0 min-[1380px]:[&>*+*]:border-l min-[1380px]:[&>*+*]:border-ink';
+
+/** Checks to reactions. */
+function Zones({ data, work }: PartProps) {
+  const { draft, change, live, inputs } = work;
+  const { evaluation } = live;
+  const system = data.job.unitSystem;
+  const missing = draft.section
+    ? 'Choose criteria: they say the combinations and the limits.'
+    : 'Choose a section: stresses and deflections are judged with it.';
+  return (
+    <div className="min-w-0">
+      <div className={`grid grid-cols-[minmax(0,1fr)] ${WIDE}`}>
+        <ChecksZone checks={evaluation?.checks ?? null} system={system} missing={missing} />
+        <SectionZone
+          section={draft.section}
+          inputs={inputs}
+          system={system}
+          mayEdit={data.mayEdit}
+          onPick={(section) => change({ section })}
+        />
+      </div>
+      <div className="border-t border-ink">
+        <LoadGroupsZone evaluation={evaluation} system={system} />
+        {evaluation && (
+          <RedundantZone
+            evaluation={evaluation}
+            mayEdit={data.mayEdit}
+            onChoose={(redundants) => change({ redundants })}
+          />
+        )}
+        <ReactionsZone evaluation={evaluation} system={system} />
+      </div>
+    </div>
+  );
+}
+
+interface RedundantProps {
+  readonly evaluation: MemberEvaluation;
+  readonly mayEdit: boolean;
+  readonly onChoose: (redundants: Redundant[]) => void;
+}
+
+function RedundantZone({ evaluation: { beam, total }, mayEdit, onChoose }: RedundantProps) {
+  const chosen = total.forceMethod.redundants.flatMap((one) => toRelease(beam, one) ?? []);
+  return (
+    <section className="zone">
+      <ZoneHeading letter="E" note={beam.degree > 0 ? 'Every choice gives the same answer.' : undefined}>
+        Redundant
+      </ZoneHeading>
+      <fieldset disabled={!mayEdit} className="min-w-0">
+        <legend className="sr-only">Redundant to release</legend>
+        <RedundantChoice
+          beam={beam}
+          solution={total}
+          chosen={releaseKey(chosen)}
+          onChoose={(releases) => onChoose(releases.map((one) => toRedundant(beam, one)))}
+        />
+      </fieldset>
+    </section>
   );
 }

@@ -38,22 +38,17 @@ export function SectionZone({ section, inputs, system, mayEdit, onPick }: Sectio
   const found = useCandidates(search, section);
   const items = found.state === 'found' ? found.items : NONE;
   const utilisations = useUtilisations(items, inputs, section?.material);
-  const field = (name: 'q' | 'depth' | 'mass') => ({
-    value: text[name],
-    onChange: (event: { target: { value: string } }) => setText({ ...text, [name]: event.target.value }),
-  });
   return (
     <section className="zone">
       <ZoneHeading letter="C" note="lightest first">
         Section
       </ZoneHeading>
-      <div className="mb-10 grid grid-cols-[minmax(0,2fr)_minmax(0,1fr)_minmax(0,1fr)] gap-14 max-md:grid-cols-2">
-        <div className="max-md:col-span-2">
-          <Field label="Designation" type="search" autoComplete="off" {...field('q')} />
-        </div>
-        <Field label={`Depth at most, ${units.depth}`} error={depth.fault} {...field('depth')} />
-        <Field label={`Mass at most, ${units.massName}`} error={mass.fault} {...field('mass')} />
-      </div>
+      <SearchFields
+        text={text}
+        units={units}
+        faults={{ depth: depth.fault, mass: mass.fault }}
+        onChange={setText}
+      />
       <p role="status" className="text-schedule text-ink-2 empty:hidden">
         {said(found, section)}
       </p>
@@ -89,7 +84,41 @@ export function SectionZone({ section, inputs, system, mayEdit, onPick }: Sectio
   );
 }
 
-function limit(text: string, dimension: 'length' | 'mass_per_length', unit: string) {
+interface SearchText {
+  readonly q: string;
+  readonly depth: string;
+  readonly mass: string;
+}
+
+interface SearchFieldsProps {
+  readonly text: SearchText;
+  readonly units: { readonly depth: string; readonly massName: string };
+  readonly faults: { readonly depth: string | undefined; readonly mass: string | undefined };
+  readonly onChange: (text: SearchText) => void;
+}
+
+function SearchFields({ text, units, faults, onChange }: SearchFieldsProps) {
+  const field = (name: keyof SearchText) => ({
+    value: text[name],
+    autoComplete: 'off',
+    onChange: (event: { target: { value: string } }) => onChange({ ...text, [name]: event.target.value }),
+  });
+  return (
+    <div className="mb-10 grid grid-cols-[minmax(0,2fr)_minmax(0,1fr)_minmax(0,1fr)] gap-14 max-md:grid-cols-2">
+      <div className="max-md:col-span-2">
+        <Field label="Designation" type="search" {...field('q')} />
+      </div>
+      <Field label={`Depth at most, ${units.depth}`} error={faults.depth} {...field('depth')} />
+      <Field label={`Mass at most, ${units.massName}`} error={faults.mass} {...field('mass')} />
+    </div>
+  );
+}
+
+function limit(
+  text: string,
+  dimension: 'length' | 'mass_per_length',
+  unit: string,
+): { value: number | null; fault?: string } {
   if (text.trim() === '') return { value: null };
   const reading = readQuantity(text, dimension, { unit });
   return reading.ok ? { value: reading.value } : { value: null, fault: reading.message };

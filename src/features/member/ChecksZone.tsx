@@ -83,10 +83,11 @@ function Working({
       <summary className="link min-h-24 text-note pointer-coarse:min-h-44">Working</summary>
       <p className="text-note text-ink-2">{row.clause}</p>
       {set ? (
-        <div className="overflow-x-auto">
+        // biome-ignore lint/a11y/noNoninteractiveTabindex: a long formula is scrolled by the keyboard too
+        <section aria-label="Working" tabIndex={0} className="overflow-x-auto">
           <Formula html={set(row.symbols)} />
           <Formula html={set(row.numbers)} />
-        </div>
+        </section>
       ) : (
         <p className="text-note">Setting the formula.</p>
       )}

@@ -76,7 +76,8 @@ export function ReactionsZone({ evaluation, system }: ZoneProps) {
         Reactions
       </ZoneHeading>
       {evaluation && (
-        <div className="overflow-x-auto">
+        // biome-ignore lint/a11y/noNoninteractiveTabindex: a wide table is scrolled by the keyboard too
+        <section aria-label="Reactions" tabIndex={0} className="overflow-x-auto">
           <table className="schedule">
             <thead>
               <tr>
@@ -118,7 +119,7 @@ export function ReactionsZone({ evaluation, system }: ZoneProps) {
               ))}
             </tbody>
           </table>
-        </div>
+        </section>
       )}
     </section>
   );

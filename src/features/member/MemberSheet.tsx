@@ -56,13 +56,15 @@ export function MemberSheet({ data }: { readonly data: WorkspaceData }) {
         onTakeTheirs={work.readAgain}
       />
       {causes.length > 0 && <CauseNotice causes={causes} />}
-      <Inputs data={data} work={work} />
-      <ElevationZone
-        live={live}
-        system={system}
-        notDrawn={causes.length > 0 ? `Not drawn: ${causes[0]?.message}` : undefined}
-        onEdit={editField}
-      />
+      <div className="flex flex-col max-md:flex-col-reverse">
+        <Inputs data={data} work={work} />
+        <ElevationZone
+          live={live}
+          system={system}
+          notDrawn={causes.length > 0 ? `Not drawn: ${causes[0]?.message}` : undefined}
+          onEdit={editField}
+        />
+      </div>
       <div className="grid grid-cols-[minmax(0,1fr)] lg:grid-cols-[minmax(0,1fr)_var(--title-column)]">
         <Zones data={data} work={work} />
         <aside className="flex min-w-0 flex-col border-ink max-lg:border-t lg:border-l">

@@ -30,6 +30,10 @@ function part(beam: Beam, names: readonly NamedLoad[], keep: (load: Load) => boo
   };
 }
 
+/** A load that is given by its groups is drawn once for each: "w G". */
+const withGroup = (name: NamedLoad): NamedLoad =>
+  name.symbol === '' ? name : { ...name, tex: `${name.tex}\\text{ ${name.group}}` };
+
 export function stripViews({
   beam,
   instance,
@@ -38,7 +42,7 @@ export function stripViews({
   strength,
   service,
 }: MemberEvaluation): StripView[] {
-  const { loadNames } = instance;
+  const loadNames = instance.loadNames.map(withGroup);
   const byGroup = groups.map(({ group, solution }): StripView => {
     const { loads, loadNames: names } = part(beam, loadNames, (load) => load.group === group);
     return {

@@ -44,5 +44,9 @@ export default defineConfig({
       ],
     },
   },
-  vite: { plugins: [tailwindcss()] },
+  vite: {
+    plugins: [tailwindcss()],
+    // Small faces of KaTeX would be written into its style sheet, where the content policy keeps them from loading.
+    build: { assetsInlineLimit: (file) => (file.endsWith('.woff2') ? false : undefined) },
+  },
 });

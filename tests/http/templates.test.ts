@@ -31,9 +31,9 @@ beforeAll(async () => {
     severity: 'safety',
   });
   await issueSections(pair, 'european-i');
-  [token, reader, stranger] = await Promise.all(
-    [author, guest, other].map(({ email }) => createApiToken(email)),
-  );
+  token = await createApiToken(author.email);
+  reader = await createApiToken(guest.email);
+  stranger = await createApiToken(other.email);
 });
 
 const get = (path: string, as = token) => ask('GET', `/api/v1/templates${path}`, { token: as });

@@ -8,12 +8,13 @@ import { chooseSection } from '@/features/section/choose.server';
 import { AppError } from '@/lib/app-error';
 import { OWN_STIFFNESS, readStiffness, readValues, type Stiffness } from './address';
 import { derivationOf } from './answer';
+import type { CatalogueData } from './catalogue-card';
 import { toProofLines } from './lines';
 import { dayText, evaluatePage, type HistoryLine, type PickedSection, type TemplatePageData } from './page';
 import { toRaw } from './raw';
 import { readReleases, toRedundant } from './release';
 import { pickSection } from './section-pick';
-import { readTemplate, type TemplateRead } from './template.server';
+import { readCatalogue, readTemplate, type TemplateRead } from './template.server';
 import { setTex } from './tex';
 import { stepTex } from './worked';
 
@@ -122,4 +123,15 @@ function barredFor(viewer: Viewer, state: TemplateRead['row']['state']): string 
   if (state === 'draft' || state === 'in_review') return 'Not issued: cannot be used yet.';
   if (state !== 'issued') return `This revision is ${state}: it is not placed in new members.`;
   return may(viewer, 'member.edit', { access: 'practice' }) ? null : 'Members are placed by engineers.';
+}
+
+/** The catalogue with the drawings of its templates. */
+export async function readCataloguePage(viewer: Viewer): Promise<CatalogueData> {
+  const entries = await readCatalogue(viewer);
+  const cards = entries.map((entry) => ({
+    ...entry,
+    day: dayText(new Date(entry.row.date)),
+    barred: barredFor(viewer, entry.row.state),
+  }));
+  return { practice: viewer.practiceName, cards };
 }

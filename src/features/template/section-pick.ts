@@ -8,12 +8,12 @@ export const materialsFor = ({ dimensions }: Pick<SectionValues, 'dimensions'>):
   return MATERIALS.filter(({ kind }) => (kind !== 'steel') === isTimber);
 };
 
-export type Pick =
+export type PickOutcome =
   | { readonly ok: true; readonly section: PickedSection }
   | { readonly ok: false; readonly message: string };
 
 /** A section of a table, made of a material. */
-export function pickSection(table: string, values: SectionValues, material: Material): Pick {
+export function pickSection(table: string, values: SectionValues, material: Material): PickOutcome {
   const resolution = resolveSection(values, material);
   if (!resolution.ok) return resolution;
   const { designation, ei, selfWeight, depth } = resolution.section;

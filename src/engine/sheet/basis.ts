@@ -65,10 +65,7 @@ export function basisBlocks(input: SheetInput, figures: Figures): SheetBlock[] {
           supportText(support, figures),
         ),
       ),
-      row(
-        'Restraint against moving sideways',
-        'None is recorded, and none is relied on in the checks made here',
-      ),
+      row('Restraint against moving sideways', 'None is recorded; buckling sideways is not checked'),
       row('Own weight', weightText(input, figures)),
       row('Shear deformation', shear ? 'Left out' : 'Included'),
     ]),

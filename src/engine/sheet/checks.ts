@@ -10,7 +10,7 @@ const purposeOf = ({ kind, dimension }: CheckRow): Purpose =>
 export function checkBlocks({ result, section, criteria }: SheetInput, figures: Figures): SheetBlock[] {
   const { checks } = result;
   if (!checks) return [{ kind: 'text', tone: 'warning', text: nothingChecked(section, criteria) }];
-  const source = criteria ? `rev ${criteria.revision}` : '';
+  const source = criteria ? `criteria rev ${criteria.revision}` : '';
   const governing = checks.rows[0];
   return [
     {
@@ -18,24 +18,28 @@ export function checkBlocks({ result, section, criteria }: SheetInput, figures: 
       source,
       results: governing ? [{ value: formatUtilisation(governing.ratio), unit: '' }] : [],
       rows: checks.rows.map((row) => {
-        const { title, place, demand, capacity, ratio } = row;
+        const { title, place, clause, demand, capacity, ratio } = row;
         const purpose = purposeOf(row);
         const [d, c] = [figures.value(demand, purpose), figures.whole(capacity, purpose)];
-        return { title, place, demand: d, capacity: c, ratio };
+        return { title, place, clause, demand: d, capacity: c, ratio };
       }),
     },
-    ...checks.rows.map(workingOf),
+    // A deflection and its limit stand in the table; a stress has a working of its own.
+    ...checks.rows.filter(({ kind }) => kind !== 'deflection').map(workingOf),
     { kind: 'text', text: 'Not checked on this sheet:' },
     { kind: 'list', items: checks.not_checked },
   ];
 }
 
+/** Fractions at their full size, although they stand in a line. */
+const displayed = (tex: string): string => tex.replaceAll('\\frac', '\\dfrac');
+
 const workingOf = ({ title, place, clause, symbols, numbers, ratio }: CheckRow): SheetBlock => ({
   kind: 'formula',
   title: `${title}: ${place}`,
-  symbols,
-  numbers,
-  note: clause,
+  origin: clause,
+  symbols: displayed(symbols),
+  numbers: displayed(numbers),
   results: [{ value: formatUtilisation(ratio), unit: ratio <= 1 ? 'passes' : 'fails' }],
 });
 

@@ -24,8 +24,9 @@ export function derivationBlocks({ result }: SheetInput): SheetBlock[] {
 
 function stepBlock(step: DerivationStep, index: number): SheetBlock {
   const { title, symbols, numbers, note, charts } = step;
-  const sources = [...new Set((charts ?? []).map(({ title: name, source }) => `${name}: ${source}`))];
-  const notes = [...(note === undefined ? [] : [note]), ...sources];
+  const origin = [...new Set((charts ?? []).map(({ title: name, source }) => `${name}: ${source}`))].join(
+    '; ',
+  );
   return {
     kind: 'formula',
     source: `step ${index + 1}`,
@@ -33,7 +34,8 @@ function stepBlock(step: DerivationStep, index: number): SheetBlock {
     title,
     symbols,
     numbers: numbers === '' ? '' : `=${numbers}`,
-    ...(notes.length > 0 && { note: notes.join(' · ') }),
+    ...(origin !== '' && { origin }),
+    ...(note !== undefined && { note }),
   };
 }
 

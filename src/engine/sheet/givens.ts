@@ -66,10 +66,14 @@ function rowsOf(
     return Array.isArray(value) ? listRows(parameter, value, typed, figures) : [];
   if (typeof value === 'number') return [measured(parameter, name, value, typed, figures)];
   if (!isFields(value)) return [];
-  return Object.entries(value).map(([group, share]) => {
+  const shares = Object.entries(value).map(([group, share]) => {
     const part = isFields(typed) ? typed[group] : typed;
     return measured(parameter, `${name}: ${groupText(group)}`, Number(share), part, figures);
   });
+  if (shares.length < 2) return shares;
+  const sum = Object.values(value).reduce((total, share) => total + Number(share), 0);
+  const all = row(`${name}: all groups`, { tex }, ...exactly(sum, unitOf(parameter, figures.system)), 'sum');
+  return [...shares, { ...all, strong: true }];
 }
 
 const measured = (

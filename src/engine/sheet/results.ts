@@ -20,7 +20,9 @@ export function resultBlocks({ result, criteria }: SheetInput, figures: Figures)
     list.map(({ combination, extremes }) => ({ name: combination.name, extremes }));
   return [
     forcesTable([...unfactored, ...combined(strength)], figures),
-    ...(criteria ? [{ kind: 'text', tone: 'note', text: `Combinations: ${criteria.basis}.` } as const] : []),
+    ...(criteria
+      ? [{ kind: 'text', tone: 'note', text: `Combinations: ${indexed(criteria.basis)}.` } as const]
+      : []),
     deflectionTable([...unfactored, ...onlyOnce(combined(service))], figures),
     {
       kind: 'text',
@@ -29,6 +31,9 @@ export function resultBlocks({ result, criteria }: SheetInput, figures: Figures)
     },
   ];
 }
+
+/** f_y and γ_M0 of a text with their indices marked: f_{y}, γ_{M0}. */
+const indexed = (text: string): string => text.replaceAll(/(?<=\p{L})_(\w+)/gu, '_{$1}');
 
 /** Several limits may be about one combination. */
 const onlyOnce = (loaded: readonly Loaded[]): Loaded[] => [

@@ -46,7 +46,7 @@ export function sectionBlocks({ section, result, ownWeight }: SheetInput, figure
   return [
     {
       kind: 'text',
-      source: `${table} ed. ${edition}`,
+      source: `edition ${edition}`,
       text: `${designation}, ${material.name}, from ${table}, edition ${edition}.`,
     },
     {

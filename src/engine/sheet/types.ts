@@ -102,7 +102,11 @@ type Beside = { readonly source?: string; readonly results?: readonly SheetFigur
 export type SheetBlock = Beside &
   (
     | { readonly kind: 'heading'; readonly number: number; readonly title: string }
-    | { readonly kind: 'text'; readonly text: string; readonly tone?: 'note' | 'warning' }
+    | {
+        readonly kind: 'text' /** An index is written as f_{y}. */;
+        readonly text: string;
+        readonly tone?: 'note' | 'warning';
+      }
     | {
         readonly kind: 'table';
         readonly name: string;
@@ -120,6 +124,8 @@ export type SheetBlock = Beside &
     | {
         readonly kind: 'formula';
         readonly title: string;
+        /** The published closed forms that it uses. */
+        readonly origin?: string;
         readonly symbols: string;
         readonly numbers: string;
         readonly note?: string;
@@ -132,6 +138,7 @@ export type SheetBlock = Beside &
 export type JudgedRow = {
   readonly title: string;
   readonly place: string;
+  readonly clause: string;
   readonly demand: string;
   readonly capacity: string;
   readonly ratio: number;

@@ -1,4 +1,5 @@
 import type { ReactNode } from 'react';
+import { RichHtml } from '@/components/drawing/marks/RichHtml';
 import { DRAWING_FORMATS } from '@/components/drawing/quantity-format';
 import type { UnitSystemName } from '@/engine/quantity';
 import type { SheetBlock, SheetFigure } from '@/engine/sheet';
@@ -45,6 +46,7 @@ function SheetRow({ block, children }: { block: SheetBlock; children: ReactNode 
             {results.map((figure) => (
               <ResultFigure key={`${figure.letter} ${figure.value}`} figure={figure} />
             ))}
+            {kind === 'caution' && <small>wording {block.version}</small>}
           </div>
         </>
       )}
@@ -54,7 +56,10 @@ function SheetRow({ block, children }: { block: SheetBlock; children: ReactNode 
 
 const ResultFigure = ({ figure: { letter, value, unit } }: { figure: SheetFigure }) => (
   <p>
-    {letter !== undefined && <Tex tex={letter} />} <b>{value}</b> <small>{unit}</small>
+    {letter !== undefined && <Tex tex={letter} />}{' '}
+    <span className="whitespace-nowrap">
+      <b>{value}</b> <small>{unit}</small>
+    </span>
   </p>
 );
 
@@ -67,7 +72,11 @@ function Working({ block }: { block: Exclude<SheetBlock, { kind: 'drawing' }> })
         </h2>
       );
     case 'text':
-      return <p className={block.tone && `cs-${block.tone}`}>{block.text}</p>;
+      return (
+        <p className={block.tone && `cs-${block.tone}`}>
+          <RichHtml text={block.text} />
+        </p>
+      );
     case 'table':
       return <SheetTable block={block} />;
     case 'checks':
@@ -83,27 +92,26 @@ function Working({ block }: { block: Exclude<SheetBlock, { kind: 'drawing' }> })
         </ul>
       );
     case 'caution':
-      return (
-        <p className="cs-caution">
-          {block.text} <small>wording {block.version}</small>
-        </p>
-      );
+      return <p className="cs-caution">{block.text}</p>;
   }
 }
 
+/** TeX up to this length stands in one line with what it comes to. */
+const ONE_LINE = 84;
+
 function Formula({ block }: { block: Extract<SheetBlock, { kind: 'formula' }> }) {
-  const { title, symbols, numbers, note } = block;
+  const { title, origin, symbols, numbers, note } = block;
+  const isShort = numbers.startsWith('=') && symbols.length + numbers.length <= ONE_LINE;
+  const lines = (isShort ? [symbols + numbers] : [symbols, numbers]).filter((line) => line !== '');
   return (
     <>
       <p className="cs-step">{title}</p>
-      <p className="cs-formula">
-        <Tex tex={symbols} />
-      </p>
-      {numbers !== '' && (
-        <p className="cs-formula">
-          <Tex tex={numbers} />
+      {origin !== undefined && <p className="cs-note">{origin}</p>}
+      {lines.map((line) => (
+        <p key={line} className="cs-formula">
+          <Tex tex={line} />
         </p>
-      )}
+      ))}
       {note !== undefined && <p className="cs-note">{note}</p>}
     </>
   );

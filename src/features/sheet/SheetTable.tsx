@@ -24,7 +24,7 @@ export function SheetTable({ block }: { block: Extract<SheetBlock, { kind: 'tabl
       <tbody>
         {rows.map(({ cells, strong }, k) => (
           // biome-ignore lint/suspicious/noArrayIndexKey: rows of a printed table have no identity but their place
-          <tr key={k} data-strong={strong}>
+          <tr key={k} data-strong={strong || undefined}>
             {cells.map((cell, c) => (
               // biome-ignore lint/suspicious/noArrayIndexKey: as above
               <td key={c} className={look(c)}>
@@ -51,11 +51,12 @@ export function CheckTable({ rows }: { rows: readonly JudgedRow[] }) {
         </tr>
       </thead>
       <tbody>
-        {rows.map(({ title, place, demand, capacity, ratio }, index) => (
+        {rows.map(({ title, place, clause, demand, capacity, ratio }, index) => (
           <tr key={`${title} ${place}`} data-strong={index === 0 || undefined}>
             <td>
               {title}
               <span className="cs-place">{place}</span>
+              <span className="cs-place">{clause}</span>
             </td>
             <td className="whitespace-nowrap">
               {demand} on {capacity}

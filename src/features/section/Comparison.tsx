@@ -23,7 +23,7 @@ const COMPARED: readonly SectionField[] = [
 function difference(item: SectionItem, first: SectionItem, field: SectionField): string {
   const [value, from] = [measureOf(item, field), measureOf(first, field)];
   if (value === null || from === null) return '';
-  const percent = formatNumber((value / from - 1) * 100);
+  const percent = formatNumber((value / from - 1) * 100, { places: 0 });
   return `${value >= from ? `+${percent}` : percent} %`;
 }
 
@@ -37,7 +37,9 @@ export function Comparison({ pinned, system }: ComparisonProps) {
         <table className="schedule">
           <thead>
             <tr>
-              <td />
+              <th scope="col">
+                <span className="sr-only">Property</span>
+              </th>
               {pinned.map((item, i) => (
                 <th key={`${item.table} ${item.designation}`} scope="col" className="figure">
                   {i + 1}

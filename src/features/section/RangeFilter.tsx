@@ -1,10 +1,10 @@
 import { useMemo } from 'react';
 import { roundStep } from '@/components/drawing/geometry/scale';
 import { HistogramRange } from '@/components/drawing/HistogramRange';
-import type { Bins } from '@/components/drawing/histogram/histogram';
+import { type Bins, shifted } from '@/components/drawing/histogram/histogram';
 import { RichHtml } from '@/components/drawing/marks/RichHtml';
 import type { UnitSystemName } from '@/engine/quantity';
-import type { Bound, PageState } from './address';
+import { type Bound, type PageState, withBound } from './address';
 import { FIELD_WORDS, fromShown, richUnitOf, toShown, unitOf } from './display';
 import { NumberBound } from './NumberBound';
 import { measureOf } from './query';
@@ -23,16 +23,16 @@ interface RangeFilterProps {
 }
 
 const FIELD = { depth: 'depth_mm', mass: 'mass_kg_m' } as const;
-export const NUDGE = { depth: { metric: 1, us: 0.25 }, mass: { metric: 1, us: 1 } } as const;
+const NUDGE = { depth: { metric: 1, us: 0.25 }, mass: { metric: 1, us: 1 } } as const;
 const BARS = 32;
 
-export function binsOf(values: readonly number[]): Bins {
+function binsOf(values: readonly number[]): Bins {
   const bin = roundStep(Math.max(1, ...values) / BARS);
   return { from: 0, to: bin * Math.max(1, Math.ceil(Math.max(0, ...values) / bin)), bin };
 }
 
 /** The range that the cursors stand at, in the unit shown; an end without a bound is the histogram's. */
-export function rangeOf(state: PageState, measure: Ranged, bins: Bins, system: UnitSystemName) {
+function rangeOf(state: PageState, measure: Ranged, bins: Bins, system: UnitSystemName) {
   const at = (end: 'min' | 'max', open: number) => {
     const bound = state.bounds[`${measure}_${end}`];
     return bound === undefined ? open : Number(toShown(FIELD[measure], bound, system).toPrecision(9));
@@ -41,7 +41,7 @@ export function rangeOf(state: PageState, measure: Ranged, bins: Bins, system: U
   return { low: Math.max(bins.from, low), high: Math.max(low, Math.min(bins.to, at('max', bins.to))) };
 }
 
-export function boundsOf(
+function boundsOf(
   { low, high }: { low: number; high: number },
   measure: Ranged,
   bins: Bins,
@@ -55,11 +55,23 @@ export function boundsOf(
   ];
 }
 
-export const shownValues = (
+const shownValues = (items: readonly SectionItem[], measure: Ranged, system: UnitSystemName): number[] =>
+  items.map((item) => toShown(FIELD[measure], measureOf(item, FIELD[measure]) ?? 0, system));
+
+/** The range of depth moved by a step, its width kept. */
+export function nudged(
+  state: PageState,
   items: readonly SectionItem[],
-  measure: Ranged,
+  turn: 1 | -1,
   system: UnitSystemName,
-): number[] => items.map((item) => toShown(FIELD[measure], measureOf(item, FIELD[measure]) ?? 0, system));
+): PageState {
+  const bins = binsOf(shownValues(items, 'depth', system));
+  const range = shifted(rangeOf(state, 'depth', bins, system), turn * 10 * NUDGE.depth[system], bins);
+  return boundsOf(range, 'depth', bins, system).reduce(
+    (now, [name, value]) => withBound(now, name, value),
+    state,
+  );
+}
 
 /** Depth or mass: two cursors over a histogram, and a field at each end that does the same. */
 export function RangeFilter({ measure, state, system, base, meeting, onBound }: RangeFilterProps) {

@@ -60,7 +60,7 @@ export function ResultLine(props: ResultLineProps) {
       <span role="status" className="text-ink-2">
         {said}
       </span>
-      {found > 0 && (
+      {found > 0 && view.last > 0 && (
         <span className="ml-auto text-ink-2">
           Rows {view.first} to {view.last} of {found}
         </span>

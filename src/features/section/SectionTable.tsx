@@ -42,6 +42,18 @@ function moved(key: string, at: number, page: number, rows: number): number | nu
   return to === undefined || rows === 0 ? null : Math.max(0, Math.min(rows - 1, to));
 }
 
+/** Another answer is read from its top; the line above says which rows are in view. */
+function useReport(
+  rows: readonly SectionItem[],
+  { first, size, startAt }: ReturnType<typeof useRows>,
+  onView: SectionTableProps['onView'],
+) {
+  // biome-ignore lint/correctness/useExhaustiveDependencies: not when the way to scroll is made anew
+  useEffect(() => startAt(0), [rows]);
+  const last = Math.min(rows.length, first + size);
+  useEffect(() => onView(first + 1, last), [onView, first, last]);
+}
+
 /** The sections that meet the query: only the rows in view are drawn, and the rule beside them is the scroll bar. */
 export function SectionTable(props: SectionTableProps) {
   const { rows, query, system, chosen, onChoose, onView } = props;
@@ -55,11 +67,7 @@ export function SectionTable(props: SectionTableProps) {
     getRowId: keyOf,
   });
   const view = useRows(rows.length);
-  const { startAt } = view;
-  // biome-ignore lint/correctness/useExhaustiveDependencies: another answer is read from its top
-  useEffect(() => startAt(0), [rows]);
-  const last = Math.min(rows.length, view.first + view.size);
-  useEffect(() => onView(view.first + 1, last), [onView, view.first, last]);
+  useReport(rows, view, onView);
 
   const at = rows.findIndex((item) => keyOf(item) === chosen);
   const onKeyDown = (event: KeyboardEvent) => {
@@ -205,7 +213,7 @@ function SectionRow({ id, row, index, pins, chosen, uses, system, onChoose, onPi
           tabIndex={-1}
           className="pin"
           aria-pressed={pin > 0}
-          aria-label={`${pin > 0 ? 'Unpin' : 'Pin'} ${name}`}
+          aria-label={pin > 0 ? `Unpin ${pin}, ${name}` : `Pin ${name}`}
           onClick={(event) => {
             event.stopPropagation();
             onPin(item);

@@ -1,4 +1,3 @@
-import type { OutlinedSection } from '@/components/drawing/section/outlined';
 import type { UnitSystemName } from '@/engine/quantity';
 import { outlinePath, sectionProperties } from '@/engine/section';
 import { axesOfTable, shownName } from './display';
@@ -8,11 +7,7 @@ import { dimensionsOf, type SectionItem } from './section';
 const MM = 1000;
 
 /** A section as drawings take it: its true outline, and the axis letters of its table. */
-export function outlineOf(
-  item: SectionItem,
-  axes: EditionView['axes'],
-  system: UnitSystemName,
-): OutlinedSection {
+export function outlineOf(item: SectionItem, axes: EditionView['axes'], system: UnitSystemName) {
   const dimensions = dimensionsOf(item);
   return {
     name: shownName(item.designation),

@@ -1,12 +1,13 @@
 import type { DerivationStep } from '../derivation/index';
-import { unitText } from '../quantity/index';
+import { type Purpose, type UnitSystemName, unitText } from '../quantity/index';
+import { figuresOf } from './figures';
 import type { SheetBlock, SheetFigure, SheetInput } from './types';
 
 /** A single letter with its index before the equals sign that gives its value: R_B, M_A, f_{BB}. */
 const LETTER = /^(?:.*\\Rightarrow\\quad )?([A-Za-z](?:_(?:\{\w+\}|\w))?)=/;
 
 /** The worked derivation as it was stored, one step a block. */
-export function derivationBlocks({ result }: SheetInput): SheetBlock[] {
+export function derivationBlocks({ result, system }: SheetInput): SheetBlock[] {
   const steps = result.derivation ?? [];
   if (steps.length === 0)
     return [
@@ -17,12 +18,15 @@ export function derivationBlocks({ result }: SheetInput): SheetBlock[] {
       },
     ];
   return [
-    { kind: 'text', text: 'Under all loads together, unfactored. Worked in kN, m and mm.' },
-    ...steps.map(stepBlock),
+    {
+      kind: 'text',
+      text: `Under all loads together, unfactored. Worked in kN, m and mm${system === 'us' ? '; results also in US units' : ''}.`,
+    },
+    ...steps.map((step, index) => stepBlock(step, index, system)),
   ];
 }
 
-function stepBlock(step: DerivationStep, index: number): SheetBlock {
+function stepBlock(step: DerivationStep, index: number, system: UnitSystemName): SheetBlock {
   const { title, symbols, numbers, note, charts } = step;
   const origin = [...new Set((charts ?? []).map(({ title: name, source }) => `${name}: ${source}`))].join(
     '; ',
@@ -30,7 +34,7 @@ function stepBlock(step: DerivationStep, index: number): SheetBlock {
   return {
     kind: 'formula',
     source: `step ${index + 1}`,
-    results: resultOf(step),
+    results: resultsOf(step, system),
     title,
     symbols,
     numbers: numbers === '' ? '' : `=${numbers}`,
@@ -39,9 +43,24 @@ function stepBlock(step: DerivationStep, index: number): SheetBlock {
   };
 }
 
-function resultOf({ symbols, display, unit }: DerivationStep): SheetFigure[] {
+/** A job's own unit for what a derivation gives in kN, m and mm. */
+const PURPOSES: Partial<Record<DerivationStep['unit'], Purpose>> = {
+  m: 'position',
+  mm: 'deflection',
+  kN: 'reaction',
+  kNm: 'moment',
+};
+
+function resultsOf({ symbols, display, value, unit }: DerivationStep, system: UnitSystemName): SheetFigure[] {
   if (display === '') return [];
   const letter = LETTER.exec(symbols)?.[1];
   const figure = { value: display, unit: unit === '' ? '' : unitText(unit) };
-  return [letter === undefined ? figure : { letter, ...figure }];
+  const purpose = PURPOSES[unit];
+  const own = figuresOf(system);
+  return [
+    letter === undefined ? figure : { letter, ...figure },
+    ...(system === 'us' && purpose && value !== null
+      ? [{ value: own.value(value, purpose), unit: own.unit(purpose) }]
+      : []),
+  ];
 }

@@ -33,7 +33,7 @@ export function givensTable(input: SheetInput, figures: Figures): SheetBlock {
       { title: 'Symbol' },
       { title: 'Value', figures: true },
       { title: 'Unit' },
-      { title: 'From' },
+      { title: 'Typed, or from' },
     ],
     rows: [...rows, ...stiffnessRows(input, figures)],
   };
@@ -44,7 +44,7 @@ const isFields = (value: unknown): value is Readonly<Record<string, unknown>> =>
 
 /** What was typed; a value in SI came from a program. */
 const typedText = (typed: unknown): string => {
-  if (typeof typed === 'string') return `“${typed}”`;
+  if (typeof typed === 'string') return typed;
   return typeof typed === 'number' ? 'SI value' : 'template';
 };
 

@@ -114,7 +114,7 @@ function sayTime(): void {
 }
 
 /** Shrinks the pages to a narrow window; on paper they keep their size. */
-function fit(): void {
+function fitWindow(): void {
   const width = pages[0]?.offsetWidth ?? 0;
   const zoom = Math.min(1, root.clientWidth / Math.max(1, width));
   root.style.setProperty('--cs-zoom', zoom.toFixed(4));
@@ -129,10 +129,10 @@ async function start(): Promise<void> {
   divide(first);
   number();
   root.dataset['paged'] = 'done';
-  fit();
+  fitWindow();
 }
 
-addEventListener('resize', fit);
+addEventListener('resize', fitWindow);
 addEventListener('beforeprint', sayTime);
 document.querySelector('[data-print]')?.addEventListener('click', () => print());
 await start();

@@ -1,0 +1,220 @@
+import { readFileSync } from 'node:fs';
+import { describe, expect, test } from 'vitest';
+import { criteriaDocument } from '@/engine/check';
+import { derive } from '@/engine/derivation';
+import type { UnitSystemName } from '@/engine/quantity';
+import { materialFor } from '@/engine/section';
+import { buildFaultSheet, buildSheet, type SheetBlock, type SheetInput } from '@/engine/sheet';
+import { shippedTemplate } from '../../../tests/support/templates';
+import { evaluateMember } from '../member/evaluate';
+import { drawnSolution, toStoredResult } from '../member/result';
+import { readPaper, shortCode, watermarkOf } from './sheet';
+
+const SLUG = 'propped-cantilever-overhang-uniform';
+const CRITERIA = criteriaDocument.parse(
+  JSON.parse(readFileSync('data/criteria/steel-elastic-en.json', 'utf8')),
+);
+const S355 = materialFor('s355');
+/** IPE 270 of EN 10365, its dimensions; moments from the shipped table. */
+const IPE_270 = {
+  designation: 'IPE 270',
+  dimensions: { shape: 'i' as const, h: 0.27, b: 0.135, tw: 0.0066, tf: 0.0102, r: 0.015 },
+  massKgM: 36.1,
+  iMajorCm4: 5789.8,
+  wElCm3: 428.87,
+};
+
+interface Asked {
+  readonly slug?: string;
+  readonly parameters: Readonly<Record<string, unknown>>;
+  readonly system?: UnitSystemName;
+  readonly isChecked?: boolean;
+}
+
+/** The sheet of a member as it would be stored: through JSON, as the database gives it back. */
+function sheetOf({ slug = SLUG, parameters, system = 'metric', isChecked = false }: Asked) {
+  const template = shippedTemplate(slug);
+  const material = S355;
+  if (!material) throw new Error('S355 is shipped');
+  const reading = evaluateMember({
+    template,
+    parameters,
+    system,
+    section: isChecked ? { values: IPE_270, material } : null,
+    criteria: isChecked ? CRITERIA : null,
+    ownWeight: isChecked,
+  });
+  if (!reading.ok) throw new Error(JSON.stringify(reading.faults));
+  const { beam, total, instance } = reading.evaluation;
+  const derivation = derive({
+    beam,
+    redundants: total.forceMethod.redundants,
+    names: { lengths: instance.dimensions, loads: instance.loadNames },
+  });
+  const stored = toStoredResult(reading.evaluation);
+  if (stored.kind === 'fault') throw new Error(stored.message);
+  const result: typeof stored = JSON.parse(JSON.stringify({ ...stored, derivation }));
+  const input: SheetInput = {
+    system,
+    purpose: 'Carries the roof.',
+    basis: '',
+    template: { reference: 'Prop 5', name: template.name, revision: 2, parameters: template.parameters },
+    parameters,
+    ownWeight: { acts: isChecked, reason: 'Compared with the closed form' },
+    section: isChecked
+      ? {
+          designation: 'IPE 270',
+          table: 'European I sections',
+          edition: 1,
+          material: { name: material.name, e: material.e, source: material.source.standard },
+          computed: ['i_major_cm4'],
+        }
+      : null,
+    criteria: isChecked ? { name: CRITERIA.name, revision: 1, basis: CRITERIA.strength.basis } : null,
+    result: { ...result, total: drawnSolution(result.total) },
+    cautions: [{ title: 'Stop and ask', text: 'Stop and ask.', version: 3 }],
+  };
+  return buildSheet(input);
+}
+
+type Of<K extends SheetBlock['kind']> = Extract<SheetBlock, { kind: K }>;
+const all = <K extends SheetBlock['kind']>(blocks: readonly SheetBlock[], kind: K): Of<K>[] =>
+  blocks.filter((block): block is Of<K> => block.kind === kind);
+const table = (blocks: readonly SheetBlock[], name: string) => {
+  const found = all(blocks, 'table').find((one) => one.name === name);
+  if (!found) throw new Error(`The sheet has no table “${name}”`);
+  return found;
+};
+const textsOf = (blocks: readonly SheetBlock[], name: string) =>
+  table(blocks, name).rows.map(({ cells }) =>
+    cells.map((cell) => (typeof cell === 'string' ? cell : cell.tex)),
+  );
+
+/** Spans in m, overhangs in m. */
+const PAIRS = [
+  [3, 0.6],
+  [4, 1],
+  [4.5, 1.35],
+  [5, 2.5],
+  [5.4, 1.8],
+  [6, 1.8],
+  [6.25, 2.2],
+  [7.2, 2.16],
+  [8, 3.2],
+  [10, 4],
+] as const;
+const W = 8.4;
+
+describe('the propped cantilever with overhang', () => {
+  // R_B = 3wL/8 + wa + 3wa²/4L: by superposition of the two published cases of the cantilever (deflections of a uniform
+  // load, and of the force and couple that the overhang puts on B), equal to the prop's R_B L³/3EI.
+  test.each(PAIRS)('of L = %d m and a = %d m shows the closed form’s prop reaction', (L, a) => {
+    const blocks = sheetOf({ parameters: { L: `${L} m`, a: `${a} m`, w: `${W} kN/m` } });
+    const prop = (3 * W * L) / 8 + W * a + (3 * W * a ** 2) / (4 * L);
+    const reactions = textsOf(blocks, 'Reactions by group, unfactored');
+    expect(reactions.find(([letter]) => letter === 'R_{B}')?.at(-1)).toBe(prop.toFixed(1));
+    const derived = all(blocks, 'formula')
+      .flatMap(({ results }) => results ?? [])
+      .filter(({ letter }) => letter === 'R_{B}');
+    expect(derived.length).toBeGreaterThan(0);
+    for (const { value, unit } of derived) expect([value, unit]).toEqual([prop.toPrecision(4), 'kN']);
+  });
+});
+
+describe('a sheet', () => {
+  const blocks = sheetOf({
+    parameters: { L: '6 m', a: '1.8 m', w: { G: '5.2 kN/m', S: '3.6 kN/m' } },
+    isChecked: true,
+  });
+
+  test('goes through its nine sections in order', () => {
+    expect(all(blocks, 'heading').map(({ number, title }) => `${number} ${title}`)).toEqual([
+      '1 What this sheet covers',
+      '2 Givens',
+      '3 Elevation and diagrams: all loads together, unfactored',
+      '4 Derivation',
+      '5 Results',
+      '6 Section properties used',
+      '7 Checks, governing first',
+      '8 Reactions to hand on',
+      '9 Cautions',
+    ]);
+  });
+
+  test('shows givens exactly as given, loads by their groups and with their sum', () => {
+    expect(textsOf(blocks, 'Givens').slice(0, 5)).toEqual([
+      ['Span', 'L', '6', 'm', '6 m'],
+      ['Overhang', 'a', '1.8', 'm', '1.8 m'],
+      ['Uniform load: G, permanent', 'w', '5.2', 'kN/m', '5.2 kN/m'],
+      ['Uniform load: S, snow', 'w', '3.6', 'kN/m', '3.6 kN/m'],
+      ['Uniform load: all groups', 'w', '8.8', 'kN/m', 'sum'],
+    ]);
+  });
+
+  test('gives reactions by group, which add up to those of all together within their rounding', () => {
+    for (const [, , ...values] of textsOf(blocks, 'Reactions by group, unfactored')) {
+      const [g = Number.NaN, s = Number.NaN, together = Number.NaN] = values.map(Number);
+      expect(Math.abs(g + s - together)).toBeLessThan(0.11);
+    }
+  });
+
+  test('puts the governing check first, and says what was not checked', () => {
+    const ratios = all(blocks, 'checks')[0]?.rows.map(({ ratio }) => ratio) ?? [];
+    expect(ratios.length).toBeGreaterThan(2);
+    expect(ratios).toEqual([...ratios].sort((a, b) => b - a));
+    expect(all(blocks, 'list')[0]?.items).toEqual(CRITERIA.not_checked);
+  });
+
+  test('marks what was computed of the section', () => {
+    const from = textsOf(blocks, 'Section properties used').map((cells) => [cells[1], cells[4]]);
+    expect(from).toContainEqual(['I', 'computed from the dimensions']);
+    expect(from).toContainEqual(['W_{el}', 'table, edition 1']);
+  });
+
+  test('names both methods, the residuals and the wording of each caution', () => {
+    const texts = all(blocks, 'text').map(({ text }) => text);
+    expect(texts.some((text) => /force method and direct stiffness, agree within/.test(text))).toBe(true);
+    expect(all(blocks, 'caution')).toEqual([{ kind: 'caution', text: 'Stop and ask.', version: 3 }]);
+  });
+
+  test('says when nothing is checked', () => {
+    const unchecked = sheetOf({ parameters: { L: '6 m', a: '1.8 m', w: '8 kN/m' } });
+    expect(all(unchecked, 'text').map(({ text }) => text)).toContain(
+      'Nothing is checked: no section and no criteria are chosen.',
+    );
+    expect(textsOf(unchecked, 'Basis')).toContainEqual([
+      'Own weight',
+      'Left out: Compared with the closed form',
+    ]);
+  });
+
+  test('names uplift with its minus', () => {
+    const up = sheetOf({ slug: 'propped-cantilever-overhang-tip-point', parameters: {} });
+    expect(JSON.stringify(up)).toMatch(/−[\d.]+\u00a0uplift/);
+  });
+
+  test('gives a derivation’s results in US units too', () => {
+    const us = sheetOf({ parameters: { L: `20'-0"`, a: '6 ft', w: '0.5 kip/ft' }, system: 'us' });
+    const units = all(us, 'formula').flatMap(({ results }) => (results ?? []).map(({ unit }) => unit));
+    expect(units).toContain('kip');
+    expect(textsOf(us, 'Givens')[0]).toEqual(['Span', 'L', `20'-0"`, '', `20'-0"`]);
+  });
+});
+
+test('a sheet without a result shows no figure', () => {
+  const template = { reference: 'Prop 5', name: 'Prop', revision: 1, parameters: [] };
+  const blocks = buildFaultSheet({ purpose: '', basis: '', template, cautions: [] }, 'Not proven.');
+  expect(all(blocks, 'text').at(-1)).toEqual({ kind: 'text', tone: 'warning', text: 'Not proven.' });
+  expect(all(blocks, 'table')).toEqual([]);
+});
+
+test('codes, papers and watermarks', () => {
+  expect(shortCode('d0dc74058519aaaa')).toBe('d0dc-7405-8519');
+  expect([readPaper('letter'), readPaper('LETTER'), readPaper('a3'), readPaper(null)]).toEqual([
+    'Letter',
+    'Letter',
+    'A4',
+    'A4',
+  ]);
+  expect([watermarkOf('draft'), watermarkOf('ready')]).toEqual(['Draft, not checked', 'Draft, not checked']);
+});

@@ -57,7 +57,7 @@ function Row({ match: { entry, marks }, isSelected, onChoose }: RowProps) {
       data-row={slug}
       onClick={() => onChoose(slug)}
       onFocus={() => onChoose(slug)}
-      className={`relative grid min-h-90 items-center border-b border-rule max-md:grid-cols-[minmax(0,1fr)_auto] max-md:py-8 [&>*]:px-12 [&>*]:py-8 max-md:[&>*]:py-3 ${COLUMNS} ${isSelected ? 'chosen-row bg-ochre-wash' : 'hover:bg-paper-2'}`}
+      className={`relative grid min-h-90 items-center border-b border-rule max-md:grid-cols-[minmax(0,1fr)_auto] max-md:py-8 [&>*]:px-12 [&>*]:py-8 max-md:[&>*]:py-3 ${COLUMNS} ${isSelected ? 'bg-ochre-wash shadow-[inset_3px_0_0_var(--color-ochre)]' : 'hover:bg-paper-2'}`}
     >
       <div className="max-md:col-span-2">
         <Schematic beam={schematic.beam} moment={schematic.moment} />

@@ -1,4 +1,4 @@
-import { useRef } from 'react';
+import { useMemo, useRef } from 'react';
 import { Button } from '@/components/ui/Button';
 import { EmptyState } from '@/components/ui/EmptyState';
 import { TitleStrip } from '@/components/ui/TitleStrip';
@@ -8,7 +8,7 @@ import { CatalogueFilters } from './CatalogueFilters';
 import { CatalogueList } from './CatalogueList';
 import { CatalogueSide } from './CatalogueSide';
 import { isNarrowed } from './catalogue-address';
-import type { CatalogueCard, CatalogueData } from './catalogue-card';
+import { type CatalogueCard, type CatalogueData, receiveCard } from './catalogue-card';
 import type { CatalogueQuery } from './find';
 import { useCatalogue } from './use-catalogue';
 
@@ -20,7 +20,8 @@ interface CatalogueProps {
 
 /** The library's templates: searched, filtered, and one of them at a glance. */
 export function CatalogueSheet({ data, asked }: CatalogueProps) {
-  const { cards, practice } = data;
+  const { practice } = data;
+  const cards = useMemo(() => data.cards.map(receiveCard), [data]);
   const catalogue = useCatalogue(cards, asked);
   const { query, found, shown, selected } = catalogue;
   const slug = selected?.row.slug ?? null;

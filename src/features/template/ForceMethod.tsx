@@ -1,4 +1,4 @@
-import { useMemo, useRef } from 'react';
+import { memo, useMemo, useRef } from 'react';
 import { forceMethodPictures } from '@/components/drawing/force-method-pictures';
 import { PictureEquation } from '@/components/drawing/PictureEquation';
 import { ZoneHeading } from '@/components/ui/ZoneHeading';
@@ -33,7 +33,13 @@ interface ForceMethodProps {
 const loadKit = () => import('./derivation-kit');
 
 /** The choice of redundant, and compatibility worked with it. */
-export function ForceMethod({ solved, releases, onChoose, initial, letters = ['C', 'D'] }: ForceMethodProps) {
+export const ForceMethod = memo(function ForceMethod({
+  solved,
+  releases,
+  onChoose,
+  initial,
+  letters = ['C', 'D'],
+}: ForceMethodProps) {
   const host = useRef<HTMLDivElement>(null);
   const kit = useLater(loadKit, useNear(host));
   const { beam, solution } = solved;
@@ -68,7 +74,7 @@ export function ForceMethod({ solved, releases, onChoose, initial, letters = ['C
       </div>
     </div>
   );
-}
+});
 
 /** What is released: the person's choice where it is admissible still, else the template's. */
 function redundantsOf({ beam, solution }: SolvedCase, releases: readonly Release[] | null): Redundant[] {

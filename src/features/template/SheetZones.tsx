@@ -1,4 +1,4 @@
-import type { ReactNode } from 'react';
+import { memo, type ReactNode } from 'react';
 import { RichHtml } from '@/components/drawing/marks/RichHtml';
 import { ZoneHeading } from '@/components/ui/ZoneHeading';
 import type { Template } from '@/engine/template';
@@ -59,7 +59,7 @@ export function Validity({
 }
 
 /** The proof cases with what was expected and what the engine finds. */
-export function ProofCases({ cases }: { readonly cases: readonly ProofLine[] }) {
+export const ProofCases = memo(function ProofCases({ cases }: { readonly cases: readonly ProofLine[] }) {
   return (
     <div className="grid gap-4">
       {cases.map(({ name, source, ok, fault, checks }) => (
@@ -102,7 +102,7 @@ export function ProofCases({ cases }: { readonly cases: readonly ProofLine[] }) 
       ))}
     </div>
   );
-}
+});
 
 interface ClosedFormsProps {
   readonly results: readonly ResultLine[];
@@ -130,7 +130,7 @@ export function ClosedForms({ results, formulas }: ClosedFormsProps) {
 }
 
 /** When to use the template and when not, how it is solved, and where its formulas come from. */
-export function Notes({ template }: { readonly template: Template }) {
+export const Notes = memo(function Notes({ template }: { readonly template: Template }) {
   const { use, do_not_use: avoid, method, sources } = template;
   return (
     <div className="grid gap-12">
@@ -162,7 +162,7 @@ export function Notes({ template }: { readonly template: Template }) {
       </div>
     </div>
   );
-}
+});
 
 /** "R_B" in running text with its letter lowered. */
 const lowered = (text: string): string => text.replaceAll(/(?<=[A-Za-zθδ])_([A-Za-z0-9]+)/g, '_{$1}');

@@ -1,4 +1,5 @@
 import { useMemo } from 'react';
+import type { BlockAction } from '@/components/ui/BlockActions';
 import { TitleBlock } from '@/components/ui/TitleBlock';
 import { TitleStrip } from '@/components/ui/TitleStrip';
 import { useKeys } from '@/components/ui/use-keys';
@@ -19,140 +20,16 @@ import { useTemplatePage } from './use-template-page';
 
 /** A template's page: its values, the beam that follows from them, and how it is worked. */
 export function TemplateSheet({ data }: { readonly data: TemplatePageData }) {
-  const { template, row, system, formulas } = data;
   const page = useTemplatePage(data);
-  const { outcome, good, values } = page;
-  const { evaluation } = good;
-  const rested = useRestedValue(evaluation);
-  const faults = outcome.ok ? [] : outcome.errors;
-  const causes = toCauses(template, faults);
   const action = useAction(data, page.query);
-  const rules = useMemo(
-    () => toRuleLines(template, evaluation.rules, system),
-    [template, evaluation, system],
-  );
-  const results = useMemo(
-    () => toResultLines(template, evaluation.instance, system),
-    [template, evaluation, system],
-  );
-  const lastGoodNote = outcome.ok ? undefined : 'At the last good values';
+  const { row } = data;
   return (
     <>
       <div className="flex flex-col">
-        <section className="max-md:order-2 max-md:border-t max-md:border-ink">
-          <div className="px-(--pad) pt-12">
-            <ZoneHeading
-              letter="A"
-              note={
-                <>
-                  <span className="max-lg:hidden">
-                    Figures underlined on the drawing are the same inputs.{' '}
-                  </span>
-                  <button
-                    type="button"
-                    className="link min-h-26 pointer-coarse:min-h-44"
-                    onClick={page.restore}
-                  >
-                    Restore the defaults
-                  </button>
-                </>
-              }
-            >
-              Parameters
-            </ZoneHeading>
-          </div>
-          <ParameterFields
-            template={template}
-            raw={values.raw}
-            system={system}
-            faults={fieldFaults(faults)}
-            onChange={page.setParameter}
-          >
-            <StiffnessFields
-              template={template}
-              values={values}
-              system={system}
-              fault={fieldFaults(faults).get('ei')}
-              sectionFault={data.sectionFault}
-              onChange={page.set}
-            />
-          </ParameterFields>
-        </section>
-        <section
-          className={`relative border-ink max-md:order-1 md:border-t ${outcome.ok ? '' : 'lg:grid lg:grid-cols-[minmax(0,1fr)_var(--title-column)]'}`}
-        >
-          <div className="relative min-w-0">
-            <div className="px-14 pt-9 md:absolute md:z-1">
-              <ZoneHeading letter="B">
-                Elevation<span className="sr-only"> and diagrams</span>
-              </ZoneHeading>
-            </div>
-            <BeamResults
-              beam={evaluation.beam}
-              instance={evaluation.instance}
-              solution={outcome.ok ? evaluation.solution : null}
-              system={system}
-              depth={values.section?.resolved.depth}
-              notDrawn={causes[0] && `Not drawn: ${causes[0].title}.`}
-              onEdit={focusField}
-            />
-          </div>
-          {!outcome.ok && (
-            <Causes
-              causes={causes}
-              onPutBack={page.putBack}
-              lastGood={(symbol) => textOf(data, good.values, symbol)}
-            />
-          )}
-        </section>
+        <ParametersZone data={data} page={page} />
+        <ElevationZone data={data} page={page} />
       </div>
-      <div className="grid flex-1 border-t border-ink md:grid-cols-[minmax(0,1fr)_var(--title-column)] lg:grid-cols-[minmax(0,724fr)_minmax(0,312fr)_var(--title-column)]">
-        <section className="zone md:max-lg:col-span-2 md:max-lg:border-b md:max-lg:border-ink">
-          <ForceMethod
-            solved={rested}
-            releases={page.releases}
-            onChoose={page.setReleases}
-            initial={data.worked}
-          />
-        </section>
-        <div className="min-w-0 border-ink max-md:border-t lg:border-l">
-          <Zone letter="E" title="Validity" note={lastGoodNote}>
-            <Validity rules={rules} formulas={formulas} />
-          </Zone>
-          <Zone letter="F" title="Proof cases" note={proofNote(data.proof)}>
-            <ProofCases cases={data.proof} />
-            <p className="mt-8 text-note text-ink-2 italic">
-              Run again for this page. They also ran before revision {row.revision} was issued, on engine{' '}
-              {data.engineVersion}.
-            </p>
-          </Zone>
-          <Zone letter="H" title="Closed forms" note={lastGoodNote}>
-            <ClosedForms results={results} formulas={formulas} />
-          </Zone>
-        </div>
-        <aside className="flex min-w-0 flex-col border-ink max-md:border-t md:border-l">
-          <Zone letter="G" title="Notes">
-            <Notes template={template} />
-          </Zone>
-          <div className="mt-auto">
-            <TitleBlock
-              org={data.practice}
-              orgNote="Template"
-              kind="Title"
-              title={row.name}
-              by={row.author}
-              checked={row.reviewer ?? undefined}
-              date={dayText(new Date(row.date))}
-              status={row.state}
-              reference={row.reference}
-              revision={String(row.revision)}
-              revisions={data.history}
-              action={action}
-              others={[{ label: 'Print this page', onPress: () => window.print() }]}
-            />
-          </div>
-        </aside>
-      </div>
+      <LowerZones data={data} page={page} action={action} />
       <TitleStrip
         kind="Template"
         title={row.name}
@@ -162,6 +39,152 @@ export function TemplateSheet({ data }: { readonly data: TemplatePageData }) {
         action={{ ...action, keyName: undefined }}
       />
     </>
+  );
+}
+
+type Page = ReturnType<typeof useTemplatePage>;
+interface ZoneProps {
+  readonly data: TemplatePageData;
+  readonly page: Page;
+}
+
+function ParametersZone({ data, page }: ZoneProps) {
+  const { template, system } = data;
+  const { values, outcome } = page;
+  const faults = fieldFaults(outcome.ok ? [] : outcome.errors);
+  const note = (
+    <>
+      <span className="max-lg:hidden">Figures underlined on the drawing are the same inputs. </span>
+      <button type="button" className="link min-h-26 pointer-coarse:min-h-44" onClick={page.restore}>
+        Restore the defaults
+      </button>
+    </>
+  );
+  return (
+    <section className="max-md:order-2 max-md:border-t max-md:border-ink">
+      <div className="px-(--pad) pt-12">
+        <ZoneHeading letter="A" note={note}>
+          Parameters
+        </ZoneHeading>
+      </div>
+      <ParameterFields
+        template={template}
+        raw={values.raw}
+        system={system}
+        faults={faults}
+        onChange={page.setParameter}
+      >
+        <StiffnessFields
+          template={template}
+          values={values}
+          system={system}
+          fault={faults.get('ei')}
+          sectionFault={data.sectionFault}
+          onChange={page.set}
+        />
+      </ParameterFields>
+    </section>
+  );
+}
+
+function ElevationZone({ data, page }: ZoneProps) {
+  const { outcome, good, values } = page;
+  const { evaluation } = good;
+  const causes = outcome.ok ? [] : toCauses(data.template, outcome.errors);
+  const beside = outcome.ok ? '' : 'lg:grid lg:grid-cols-[minmax(0,1fr)_var(--title-column)]';
+  return (
+    <section className={`relative border-ink max-md:order-1 md:border-t ${beside}`}>
+      <div className="relative min-w-0">
+        <div className="px-14 pt-9 md:absolute md:z-1">
+          <ZoneHeading letter="B">
+            Elevation<span className="sr-only"> and diagrams</span>
+          </ZoneHeading>
+        </div>
+        <BeamResults
+          beam={evaluation.beam}
+          instance={evaluation.instance}
+          solution={outcome.ok ? evaluation.solution : null}
+          system={data.system}
+          depth={values.section?.resolved.depth}
+          notDrawn={causes[0] && `Not drawn: see ${causes[0].title.toLowerCase()}.`}
+          onEdit={focusField}
+        />
+      </div>
+      {!outcome.ok && (
+        <Causes
+          causes={causes}
+          onPutBack={page.putBack}
+          lastGood={(symbol) => textOf(data, good.values, symbol)}
+        />
+      )}
+    </section>
+  );
+}
+
+function LowerZones({ data, page, action }: ZoneProps & { readonly action: BlockAction }) {
+  const { template, system, formulas, row } = data;
+  const { evaluation } = page.good;
+  const rested = useRestedValue(evaluation);
+  const rules = useMemo(() => toRuleLines(template, rested.rules, system), [template, rested, system]);
+  const results = useMemo(() => toResultLines(template, rested.instance, system), [template, rested, system]);
+  const note = page.outcome.ok ? undefined : 'At the last good values';
+  return (
+    <div className="grid flex-1 border-t border-ink md:grid-cols-[minmax(0,1fr)_var(--title-column)] lg:grid-cols-[minmax(0,724fr)_minmax(0,312fr)_var(--title-column)]">
+      <section className="zone md:max-lg:col-span-2 md:max-lg:border-b md:max-lg:border-ink">
+        <ForceMethod
+          solved={rested}
+          releases={page.releases}
+          onChoose={page.setReleases}
+          initial={data.worked}
+        />
+      </section>
+      <div className="min-w-0 border-ink max-md:border-t lg:border-l">
+        <Zone letter="E" title="Validity" note={note}>
+          <Validity rules={rules} formulas={formulas} />
+        </Zone>
+        <Zone letter="F" title="Proof cases" note={proofNote(data.proof)}>
+          <ProofCases cases={data.proof} />
+          <p className="mt-8 text-note text-ink-2 italic">
+            Run again for this page, on engine {data.engineNow}. Revision {row.revision} was written on engine{' '}
+            {data.engineVersion}.
+          </p>
+        </Zone>
+        {results.length > 0 && (
+          <Zone letter="H" title="Closed forms" note={note}>
+            <ClosedForms results={results} formulas={formulas} />
+          </Zone>
+        )}
+      </div>
+      <aside className="flex min-w-0 flex-col border-ink max-md:border-t md:border-l">
+        <Zone letter="G" title="Notes">
+          <Notes template={template} />
+        </Zone>
+        <div className="mt-auto">
+          <Block data={data} action={action} />
+        </div>
+      </aside>
+    </div>
+  );
+}
+
+function Block({ data, action }: { readonly data: TemplatePageData; readonly action: BlockAction }) {
+  const { row } = data;
+  return (
+    <TitleBlock
+      org={data.practice}
+      orgNote="Template"
+      kind="Title"
+      title={row.name}
+      by={row.author}
+      checked={row.reviewer ?? undefined}
+      date={dayText(new Date(row.date))}
+      status={row.state}
+      reference={row.reference}
+      revision={String(row.revision)}
+      revisions={data.history}
+      action={action}
+      others={[{ label: 'Print this page', onPress: () => window.print() }]}
+    />
   );
 }
 

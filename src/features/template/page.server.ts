@@ -3,12 +3,13 @@ import { checkRedundants } from '@/engine/model';
 import type { UnitSystemName } from '@/engine/quantity';
 import { materialFor } from '@/engine/section';
 import type { Template } from '@/engine/template';
+import { ENGINE_VERSION } from '@/engine/version';
 import { may, type Person } from '@/features/account/permission';
 import { chooseSection } from '@/features/section/choose.server';
 import { AppError } from '@/lib/app-error';
 import { OWN_STIFFNESS, readStiffness, readValues, type Stiffness } from './address';
 import { derivationOf } from './answer';
-import type { CatalogueData } from './catalogue-card';
+import { type CatalogueData, sendCard } from './catalogue-card';
 import { toProofLines } from './lines';
 import { dayText, evaluatePage, type HistoryLine, type PickedSection, type TemplatePageData } from './page';
 import { toRaw } from './raw';
@@ -42,6 +43,7 @@ export async function readTemplatePage(
     history: read.history.map(toHistoryLine),
     proof: toProofLines(template, read.proof, system),
     engineVersion: read.engineVersion,
+    engineNow: ENGINE_VERSION,
     formulas: formulasOf(template),
     parameters,
     ei: stiffness.ei,
@@ -128,10 +130,12 @@ function barredFor(viewer: Viewer, state: TemplateRead['row']['state']): string 
 /** The catalogue with the drawings of its templates. */
 export async function readCataloguePage(viewer: Viewer): Promise<CatalogueData> {
   const entries = await readCatalogue(viewer);
-  const cards = entries.map((entry) => ({
-    ...entry,
-    day: dayText(new Date(entry.row.date)),
-    barred: barredFor(viewer, entry.row.state),
-  }));
+  const cards = entries.map((entry) =>
+    sendCard({
+      ...entry,
+      day: dayText(new Date(entry.row.date)),
+      barred: barredFor(viewer, entry.row.state),
+    }),
+  );
   return { practice: viewer.practiceName, cards };
 }

@@ -34,7 +34,9 @@ export interface TemplatePageData {
   readonly template: Template;
   readonly history: readonly HistoryLine[];
   readonly proof: readonly ProofLine[];
+  /** What the revision was written on, and what runs now. */
   readonly engineVersion: string;
+  readonly engineNow: string;
   /** Formulas of the rules and closed forms, set, by their TeX. */
   readonly formulas: Readonly<Record<string, string>>;
   /** What the address asks for. */

@@ -6,6 +6,7 @@ import {
   type DisplacedShape,
   eligibleRedundants,
   type Redundant,
+  releaseMechanism,
 } from '@/engine/model';
 
 /** A component by its support: `moment` is the beam's own moment over it. */
@@ -65,7 +66,9 @@ export function releaseChoices(beam: Beam): { open: ReleaseChoice[]; barred: Bar
     .filter(({ key }) => !known.has(key))
     .flatMap((choice): BarredChoice[] => {
       const [fault] = checkRedundants(beam, choice.redundants);
-      return fault ? [{ ...choice, reason: fault.message, motion: fault.motion }] : [];
+      if (!fault) return [];
+      const motion = releaseMechanism(beam, choice.redundants) ?? undefined;
+      return [{ ...choice, reason: fault.message, motion }];
     });
   return { open, barred: barred.slice(0, MOST_BARRED) };
 }

@@ -133,7 +133,7 @@ describe('the answer of the endpoint', () => {
         expect(answer.derivation.length).toBeGreaterThan(2);
       }
     }
-  });
+  }, 20_000);
 
   test('derives the prop’s reaction with the template’s letters, in SI', () => {
     const evaluation = evaluated({ parameters: { L: '6 m', a: '1.8 m', w: '5.517 kN/m' } });

@@ -14,7 +14,6 @@ const TABLE: Record<Action, [subject: Subject, allowed: string]> = {
   'library.edit': [{ authorId: ME }, 'engineer librarian'],
   'library.submit': [{ authorId: ME }, 'engineer librarian'],
   'library.review': [{ authorId: OTHER }, 'checker librarian'],
-  'library.issue': [{ authorId: ME, reviewerId: OTHER }, 'librarian'],
   'library.withdraw': [{}, 'librarian principal'],
   'job.create': [{}, 'engineer'],
   'job.read': [OPEN, 'reader engineer checker librarian principal administrator'],
@@ -79,16 +78,9 @@ describe('conditions', () => {
     expect(may(all, 'member.check', { access: 'practice', authorId: ME })).toBe(false);
   });
 
-  test('a document is not issued unreviewed, nor on its author’s own review', () => {
-    expect(mayAs('librarian', 'library.issue', { authorId: OTHER, reviewerId: null })).toBe(false);
-    expect(mayAs('librarian', 'library.issue', { authorId: OTHER, reviewerId: OTHER })).toBe(false);
-    expect(mayAs('librarian', 'library.issue', { authorId: OTHER, reviewerId: ME })).toBe(true);
-  });
-
   test('a condition whose field was forgotten refuses', () => {
     expect(mayAs('checker', 'library.review')).toBe(false);
     expect(mayAs('engineer', 'library.edit')).toBe(false);
-    expect(mayAs('librarian', 'library.issue', { reviewerId: OTHER })).toBe(false);
   });
 });
 

@@ -10,8 +10,6 @@ export interface Person {
 export interface Subject {
   /** Who wrote the document, or saved the member last. */
   readonly authorId?: string;
-  /** Who reviewed the document; null while nobody has. */
-  readonly reviewerId?: string | null;
   /** Who can open the job besides principals and administrators: all the practice, or the people named. */
   readonly access?: 'practice' | readonly string[];
 }
@@ -22,9 +20,6 @@ const isAuthor: Condition = (person, { authorId }) => authorId === person.person
 
 const isNotAuthor: Condition = (person, { authorId }) =>
   authorId !== undefined && authorId !== person.personId;
-
-const wasReviewedByAnother: Condition = (_, { authorId, reviewerId }) =>
-  authorId !== undefined && typeof reviewerId === 'string' && reviewerId !== authorId;
 
 /** The database's policy says the same: principals answer for every job, administrators restore any. */
 const hasAccess: Condition = ({ personId, roles }, { access }) =>
@@ -63,12 +58,8 @@ const RULES = {
     grant(['engineer'], isAuthor),
   ),
   'library.review': rule(
-    'A document is reviewed by a checker or a librarian who did not write it.',
+    'A document is reviewed and issued by a checker or a librarian who did not write it.',
     grant(['checker', 'librarian'], isNotAuthor),
-  ),
-  'library.issue': rule(
-    'A document is issued by a librarian, after review by somebody who did not write it.',
-    grant(['librarian'], wasReviewedByAnother),
   ),
   'library.withdraw': rule(
     'A document is withdrawn by a librarian or a principal.',

@@ -7,6 +7,18 @@ const whole = fc.maxSafeInteger();
 const exact = (value: Wide): bigint => BigInt(value.hi) + BigInt(value.lo);
 const magnitude = (n: bigint) => (n < 0n ? -n : n);
 
+/** A double of whatever size, exactly, over 2¹²⁰⁰. */
+function scaled(value: number): bigint {
+  let [digits, shift] = [value, 0];
+  while (!Number.isInteger(digits)) {
+    digits *= 2;
+    shift++;
+  }
+  return (BigInt(digits) << 1200n) >> BigInt(shift);
+}
+const scaledPair = (w: Wide) => scaled(w.hi) + scaled(w.lo);
+const relative = (got: bigint, want: bigint) => Math.abs(Number(((got - want) * 10n ** 40n) / want)) / 1e40;
+
 describe('a wide number', () => {
   test('holds the product of two doubles to the last bit', () => {
     fc.assert(
@@ -48,6 +60,26 @@ describe('a wide number', () => {
         },
       ),
     );
+  });
+
+  test.each([
+    [1 / 3, 3],
+    [1e8 + 1, 1e-8],
+    [Math.PI, -Math.E],
+    [0.1, 1e-4],
+    [6e11, 7e-5],
+  ])('%f and %f add, multiply and divide to 30 digits', (a, b) => {
+    const [x, y] = [Wide.of(a).over(7), Wide.of(b).over(11)];
+    const [p, q] = [scaledPair(x), scaledPair(y)];
+    expect(relative(scaledPair(x.plus(y)), p + q)).toBeLessThan(1e-30);
+    expect(relative(scaledPair(x.minus(y)), p - q)).toBeLessThan(1e-30);
+    expect(relative(scaledPair(x.times(y)), (p * q) >> 1200n)).toBeLessThan(1e-30);
+    expect(relative(scaledPair(x.over(y)), (p << 1200n) / q)).toBeLessThan(1e-30);
+  });
+
+  test('keeps a difference of doubles that a double would round away', () => {
+    const difference = Wide.difference(1 + 2 ** -52, 2 ** -80);
+    expect(scaledPair(difference)).toBe(scaled(1 + 2 ** -52) - scaled(2 ** -80));
   });
 
   test('rounds to the nearest double', () => {

@@ -1,7 +1,7 @@
-import { Wide } from './wide';
+import { Wide } from '../linear/index';
 
 /** Entries of one row left of the diagonal: a piece couples (v, ψ) at its ends, and a hinge adds one rotation between. */
-export const HALF_BANDWIDTH = 4;
+const HALF_BANDWIDTH = 4;
 
 /** A pivot that vanished: the beam moves without resistance. Carries the unknown's number, for whoever has to look. */
 export class SingularStiffness extends Error {

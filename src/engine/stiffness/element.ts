@@ -1,5 +1,5 @@
+import { Wide } from '../linear/index';
 import type { Beam } from '../model/index';
-import { Wide } from './wide';
 
 /** A piece of the beam between two neighbouring points: constant EI and GA, a load varying linearly, one curvature. */
 export type Element = {

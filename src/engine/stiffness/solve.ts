@@ -1,4 +1,5 @@
 import type { Reaction } from '../beam/index';
+import { Wide } from '../linear/index';
 import type { Beam, Restraint } from '../model/index';
 import { SymmetricBand } from './band';
 import {
@@ -10,7 +11,6 @@ import {
   type SectionState,
   stateAt,
 } from './element';
-import { Wide } from './wide';
 
 export type State = { shear: number; moment: number; slope: number; deflection: number };
 
@@ -24,7 +24,7 @@ type Unknowns = { deflection: number; left: number; right: number };
 
 /**
  * The beam by the direct stiffness method: unknown deflections and rotations at every point, K u = f, banded L D Lᵀ
- * with twice the usual digits. Independent of the force method: it shares the model and nothing else.
+ * with twice the usual digits. Independent of the force method: it shares the model and the arithmetic of wide numbers, and nothing else.
  *
  * Units and signs: the engine's (m, N, rad; up and anticlockwise positive, M sagging). Prescribed movements are known
  * values; springs stand on the diagonal; a hinge has two rotations. Fails with SingularStiffness for a mechanism.

@@ -19,6 +19,7 @@ export default defineConfig({
           name: 'pure',
           include: ['src/**/*.test.{ts,tsx}', 'tests/{properties,published}/**/*.test.ts'],
           exclude: ['**/*.server.test.ts'],
+          setupFiles: 'tests/support/seed.ts',
         },
       },
       {

@@ -20,10 +20,11 @@ test('a row that agrees with its dimensions is silent', () => {
   expect(findings({})).toEqual([]);
 });
 
-test('any tube and any I that agree with themselves are silent', () => {
+test('any tube that agrees with itself is silent, be it square but for rounding', () => {
   const size = fc.double({ min: 0.05, max: 0.4, noNaN: true });
+  const slenderness = fc.oneof(fc.double({ min: 0.4, max: 1, noNaN: true }), fc.constant(1 - 2 ** -52));
   fc.assert(
-    fc.property(size, fc.double({ min: 0.4, max: 1, noNaN: true }), (h, ratio) => {
+    fc.property(size, slenderness, (h, ratio) => {
       const d = tube(h, h * ratio, h / 20, 'EN 10210');
       const { area, iMajor, iMinor, wElMajor, wPlMajor, j } = sectionProperties(d);
       const tabulated = { mass: 7850 * area, area, iMajor, iMinor, wElMajor, wPlMajor, j };
@@ -60,6 +61,12 @@ describe('one slip is reported once, with its cause', () => {
     ]);
     expect(found[0]?.cause).toMatch(cause);
   });
+});
+
+test('axes that differ by less than their values may are in no order', () => {
+  const d = tube(0.1, 0.0999, 0.005, 'EN 10210');
+  const { iMajor, iMinor } = sectionProperties(d);
+  expect(plausibilityFindings(d, { iMajor: iMinor, iMinor: iMajor }, OPTIONS)).toEqual([]);
 });
 
 describe('tolerances', () => {

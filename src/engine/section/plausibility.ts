@@ -106,17 +106,23 @@ class Comparison {
 
 const EXCHANGED = 0.1; // both axes fit the other one's value: no slip of units does that
 
-/** False where the axes look exchanged. A major value below the minor one for another reason fails its own rule. */
+/**
+ * False where the axes look exchanged. A major value below the minor one for another reason fails its own rule; of a
+ * nearly square section, whose axes differ by less than its values may, the order of the two says nothing.
+ */
 function checkAxes(
   comparison: Comparison,
   d: SectionDimensions,
   computed: { iMajor: number; iMinor: number },
+  allowed: number,
 ): boolean {
   const major = comparison.get('iMajor');
   const minor = comparison.get('iMinor');
   if (major === undefined || minor === undefined || major >= minor || depthOf(d) <= widthOf(d)) return true;
-  const fits = (value: number, expected: number) => Math.abs(value / expected - 1) < EXCHANGED;
-  if (!fits(major, computed.iMinor) || !fits(minor, computed.iMajor)) return true;
+  const agree = (limit: number, forMajor: number, forMinor: number) =>
+    Math.abs(major / forMajor - 1) <= limit && Math.abs(minor / forMinor - 1) <= limit;
+  if (agree(allowed, computed.iMajor, computed.iMinor)) return true;
+  if (!agree(EXCHANGED, computed.iMinor, computed.iMajor)) return true;
   comparison.report('axes', 'error', 'iMajor', 'I major is below I minor', 'The two axes look exchanged');
   return false;
 }
@@ -191,10 +197,10 @@ export function plausibilityFindings(
   const area = pick('area', isAreaRight);
   comparison.check('mass', 'mass', options.density * area, `m = ${options.density} kg/m³ · A`, MASS);
 
-  const areAxesRight = checkAxes(comparison, d, computed);
   const isTimber = d.shape === 'rectangle';
   const majorLimits = isTimber ? TIMBER_I : { ...I_MAJOR, above };
   const minorLimits = isTimber ? TIMBER_I : { ...I_MINOR, above };
+  const areAxesRight = checkAxes(comparison, d, computed, majorLimits.warning);
   const isMajorRight =
     areAxesRight &&
     comparison.check('second_moment', 'iMajor', computed.iMajor, 'I from the dimensions', majorLimits);

@@ -1,4 +1,4 @@
-import { add, constant, divide, type Expression, expand, multiply, subtract, ZERO } from './expression';
+import { add, constant, type Expression, expand, multiply, power, subtract } from './expression';
 import { compare, type Setting } from './setting';
 
 /** A stretch of an axis under a load (or curvature) that goes straight from w0 at `from` to w1 at `to`. */
@@ -12,7 +12,7 @@ export function cut(stretch: Stretch, at: Expression, setting: Setting): [Stretc
   if (compare(stretch.to, at, setting) <= 0) return [stretch, null];
   if (compare(stretch.from, at, setting) >= 0) return [null, stretch];
   const { from, to, w0, w1 } = stretch;
-  const part = () => divide(expand(subtract(at, from)), expand(subtract(to, from)));
+  const part = () => multiply(expand(subtract(at, from)), power(expand(subtract(to, from)), -1));
   const middle = isUniform(stretch) ? w0 : add(w0, multiply(subtract(w1, w0), part()));
   return [
     { from, to: at, w0, w1: middle },
@@ -35,5 +35,5 @@ export function resultant(
   const force = multiply(multiply(add(w0, w1), c), constant({ n: 1, d: 2 }));
   const weighted = add(w0, multiply(w1, constant(2)));
   const aboutStart = multiply(multiply(weighted, multiply(c, c)), constant({ n: 1, d: 6 }));
-  return { force, moment: lever === ZERO ? aboutStart : add(multiply(force, lever), aboutStart) };
+  return { force, moment: add(multiply(force, lever), aboutStart) };
 }

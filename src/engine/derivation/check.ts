@@ -34,7 +34,7 @@ function byOther(worked: Worked, other: Redundant): DerivationStep | null {
   if (value === null) return null;
   const expression = subtract(gap.value, multiply(symbol(unknown.tex), flexibility.value));
   const letter = gapTex(unknown).replace('0}', '}');
-  const left = `${letter}=${gapTex(unknown)}-${unknown.tex}\\,${flexibilityTex(unknown, unknown)}`;
+  const left = `${letter}=${gapTex(unknown)}-${unknown.tex}${flexibilityTex(unknown, unknown)}`;
   return calculate(beam.letters, {
     id: 'check',
     title: `Check: ${unknown.kind === 'reaction' ? 'deflection' : 'slope'} ${placeOf(unknown)} from the other redundant`,

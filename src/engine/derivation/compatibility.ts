@@ -10,8 +10,9 @@ import {
   texOf,
   ZERO,
 } from '../chart/index';
-import { imposedLetter, type Movements, rightSide } from './redundants';
-import { calculate, withUnit } from './step';
+import { withUnit } from './display';
+import { FEW, imposedLetter, type Movements, rightSide } from './redundants';
+import { calculate } from './step';
 import { numberTex, unitOf } from './symbols';
 import type { DerivationStep } from './types';
 import { flexibilityTex, gapTex, moves, type Unknown } from './unknown';
@@ -59,7 +60,7 @@ function equationTex({ beam, unknowns, flexibility, imposed }: Worked, i: number
   const at = unknowns[i]!;
   const sign = at.kind === 'internal' ? '+' : '-';
   const terms = unknowns.flatMap((unit, j) =>
-    flexibility[i]![j] === 0 ? [] : [`${sign}${unit.tex}\\,${flexibilityTex(at, unit)}`],
+    flexibility[i]![j] === 0 ? [] : [`${sign}${unit.tex}${flexibilityTex(at, unit)}`],
   );
   const right = imposed[i] === 0 ? '0' : texOf(imposedLetter(at), beam.letters.symbols());
   return `${gapTex(at)}${terms.join('')}=${right}`;
@@ -94,33 +95,31 @@ function closedForm(worked: Worked, movements: Movements): DerivationStep[] {
   ];
 }
 
+/** Terms that a set of equations with numbers may have before nobody reads it. */
+const READABLE = 60;
+
 /** All equations at once, with symbols and with numbers in mm, mrad, kN and kNm. */
 function system(worked: Worked): DerivationStep {
   const { beam, unknowns, flexibility } = worked;
-  const few = unknowns.length <= 3;
   const rows = unknowns.map((_, i) => equationTex(worked, i).replace('=', '&='));
   const numbers = unknowns.map((at, i) => {
     const terms = unknowns.flatMap((unit, j) => {
       const f = flexibility[i]![j]!;
       if (f === 0) return [];
       const shown = beam.letters.shown(flexibilityTex(at, unit), 'milli', 5);
-      return [`${shown < 0 ? '-' : '+'}${numberTex(Math.abs(shown))}\\,${unit.tex}`];
+      return [`${shown < 0 ? '-' : '+'}${numberTex(Math.abs(shown))}${unit.tex}`];
     });
     const right = beam.letters.of(rightSide(worked, i));
     const unit = unitOf(moves(at), 'milli');
     return `${terms.join('').replace(/^\+/, '')}&=${withUnit(right, unit)}`;
   });
+  const terms = flexibility.flat().filter((f) => f !== 0).length;
   const aligned = (lines: readonly string[]) => `\\begin{aligned}${lines.join('\\\\')}\\end{aligned}`;
   return {
     id: 'compatibility',
     title: `${sentence(countWord(unknowns.length))} movements must close at once`,
-    symbols: few
-      ? aligned(rows)
-      : matrixTex(
-          worked,
-          unknowns.map((_, i) => rightSide(worked, i)),
-        ),
-    numbers: aligned(numbers),
+    symbols: unknowns.length <= FEW ? aligned(rows) : matrixTex(worked),
+    numbers: terms <= READABLE ? aligned(numbers) : '',
     value: null,
     unit: '',
     display: '',
@@ -128,14 +127,19 @@ function system(worked: Worked): DerivationStep {
   };
 }
 
+/** A matrix beyond this size would not fit a page; the equations below it show every number. */
+const PRINTABLE = 6;
+
 /** F X = d */
-function matrixTex({ beam, unknowns, flexibility }: Worked, right: readonly Expression[]): string {
+function matrixTex(worked: Worked): string {
+  const { beam, unknowns, flexibility } = worked;
+  if (unknowns.length > PRINTABLE) return '\\mathbf{F}\\,\\mathbf{X}=\\mathbf{d}';
   const column = (entries: readonly string[]) => `\\begin{bmatrix}${entries.join('\\\\')}\\end{bmatrix}`;
   const rows = unknowns.map((a, i) =>
     unknowns.map((b, j) => (flexibility[i]![j] === 0 ? '0' : flexibilityTex(a, b))).join('&'),
   );
-  const known = right.map((value) => texOf(value, beam.letters.symbols()));
-  return `${column(rows)}${column(unknowns.map(({ tex }) => tex))}=${column(known)}`;
+  const right = unknowns.map((_, i) => texOf(rightSide(worked, i), beam.letters.symbols()));
+  return `${column(rows)}${column(unknowns.map(({ tex }) => tex))}=${column(right)}`;
 }
 
 /** One redundant of several: by determinants for two, else by its row of the inverse of F. */
@@ -151,15 +155,25 @@ function solved(worked: Worked, i: number): DerivationStep {
     scale: 'milli' as const,
     extra: { key: true as const, ...note },
   };
+  if (unknowns.length > FEW) {
+    // The row of the inverse, multiplied out, would be longer than it is worth.
+    const letter = symbol(unknown.tex);
+    return calculate(beam.letters, {
+      ...common,
+      symbols: `\\left(\\mathbf{F}^{-1}\\mathbf{d}\\right)_{${i + 1}}`,
+      expression: letter,
+    });
+  }
   const expression = unknowns.length === 2 ? byDeterminants(worked, i) : byInverse(worked, i);
   return calculate(beam.letters, { ...common, expression, value: values[i]! });
 }
 
 function byDeterminants(worked: Worked, i: number): Expression {
-  const { unknowns } = worked;
+  const { unknowns, flexibility } = worked;
   const [at, other] = [unknowns[i]!, unknowns[1 - i]!];
   const f = (a: Unknown, b: Unknown) => symbol(flexibilityTex(a, b));
-  const shared = i === 0 ? f(at, other) : f(other, at);
+  const [first, second] = unknowns as [Unknown, Unknown];
+  const shared = flexibility[0]![1] === 0 ? ZERO : f(first, second);
   const top = subtract(
     multiply(rightSide(worked, i), f(other, other)),
     multiply(rightSide(worked, 1 - i), shared),

@@ -1,5 +1,13 @@
 import { type Expression, type NamedLoad, type Setting, ZERO } from '../chart/index';
-import type { Beam, Load, Restraint, Support } from '../model/index';
+import {
+  type Beam,
+  defaultRedundants,
+  type LineLoad,
+  type Load,
+  type Redundant,
+  type Restraint,
+  type Support,
+} from '../model/index';
 import { Places } from './place';
 import { type Kind, Letters } from './symbols';
 import type { DeriveInput, LoadName } from './types';
@@ -26,13 +34,16 @@ export type NamedBeam = {
   /** From the left. */
   supports: readonly NamedSupport[];
   hinges: readonly { x: number; at: Expression }[];
+  /** Loads that vary are cut at every support and section, so that their size there has a letter. */
   loads: readonly LetteredLoad[];
+  /** The same, cut only where the released beam has a support or a section: what the charts are asked for. */
+  chartLoads: readonly LetteredLoad[];
   /** EI of each segment; one letter where all are alike. */
   stiffness: readonly Expression[];
   setting: (ei: Expression) => Setting;
 };
 
-export function nameBeam({ beam, names }: Pick<DeriveInput, 'beam' | 'names'>): NamedBeam {
+export function nameBeam({ beam, names, redundants }: DeriveInput): NamedBeam {
   const letters = new Letters();
   const places = new Places(letters, beam.length, names?.lengths ?? []);
   const stiffness = nameStiffness(beam, letters);
@@ -63,7 +74,7 @@ export function nameBeam({ beam, names }: Pick<DeriveInput, 'beam' | 'names'>): 
     length,
     supports,
     hinges: beam.hinges.map((x) => ({ x, at: places.load(x) })),
-    loads: nameLoads(beam, letters, places, names?.loads ?? []),
+    ...nameLoads(beam, redundants, merged(beam.loads, names?.loads ?? []), letters, places),
     stiffness,
     setting: (ei) => ({ value: letters.value, ei, length: beam.length }),
   };
@@ -105,33 +116,84 @@ export const movementOf = (restraint: Restraint): number =>
 
 /**
  * Loads with letters. Loads of one letter at one place are one load (a size that is split between groups is one size in
- * the derivation); what has no letter gets w, P, M or κ with a number. Loads that do nothing are left out.
+ * the derivation); what has no letter gets w, P, C or κ with a number. Loads that do nothing are left out.
  */
-function nameLoads(beam: Beam, letters: Letters, places: Places, names: readonly LoadName[]): LetteredLoad[] {
-  return merged(beam.loads, names).map((sized) => ({
-    numeric: sized.load,
-    load: nameLoad(sized, letters, places),
-  }));
+function nameLoads(
+  beam: Beam,
+  redundants: readonly Redundant[] | undefined,
+  loads: readonly Sized[],
+  letters: Letters,
+  places: Places,
+): Pick<NamedBeam, 'loads' | 'chartLoads'> {
+  const chosen = redundants ?? defaultRedundants(beam);
+  const removed = new Set(chosen.flatMap((r) => (r.component === 'vertical' ? [r.support] : [])));
+  const sections = [...beam.hinges, ...chosen.flatMap((r) => (r.component === 'moment' ? [r.at] : []))];
+  const supportsAt = (keep: (index: number) => boolean) =>
+    beam.supports.filter((_, index) => keep(index)).map(({ at }) => at);
+  const all = new Set([...sections, ...supportsAt(() => true)]);
+  const staying = new Set([...sections, ...supportsAt((index) => !removed.has(index))]);
+  const named = loads.map(({ load, tex }) => {
+    const name = sizer(letters, tex);
+    if (load.kind !== 'line' || load.w0 === load.w1) {
+      const one = { numeric: load, load: nameLoad(load, name, places) };
+      return { fine: [one], coarse: [one] };
+    }
+    const points = pointsWithin(load, all).map((x) => sizedPoint(load, x, name, letters, places));
+    const coarse = points.filter(({ x }) => x === load.from || x === load.to || staying.has(x));
+    return { fine: stretches(load, points), coarse: stretches(load, coarse) };
+  });
+  return { loads: named.flatMap(({ fine }) => fine), chartLoads: named.flatMap(({ coarse }) => coarse) };
 }
 
-function nameLoad({ load, tex }: Sized, letters: Letters, places: Places): NamedLoad {
-  const size = (value: number, kind: Kind, letter: string): Expression => {
+type Size = (value: number, kind: Kind, letter: string) => Expression;
+
+/** The load's own letter for its size, else a numbered one; nothing for nothing. */
+const sizer =
+  (letters: Letters, tex: string): Size =>
+  (value, kind, letter) => {
     if (value === 0 && tex === '') return ZERO;
     return (tex === '' ? null : letters.add(tex, value, kind)) ?? letters.number(letter, value, kind);
   };
+
+function nameLoad(load: Load, size: Size, places: Places): NamedLoad {
   if (load.kind === 'point') {
     return { kind: 'point', at: places.load(load.at), p: size(load.p, 'force', 'P') };
   }
   if (load.kind === 'couple') {
     return { kind: 'couple', at: places.load(load.at), m: size(load.m, 'moment', 'C') };
   }
-  const [from, to] = [places.load(load.from), places.load(load.to)];
+  const ends = { from: places.load(load.from), to: places.load(load.to) };
   if (load.kind === 'curvature') {
-    return { kind: 'curvature', from, to, kappa: size(load.kappa, 'curvature', '\\kappa') };
+    return { kind: 'curvature', ...ends, kappa: size(load.kappa, 'curvature', '\\kappa') };
   }
-  const w0 = size(load.w0, 'line', 'w');
-  const w1 = load.w1 === load.w0 ? w0 : load.w1 === 0 ? ZERO : letters.number('w', load.w1, 'line');
-  return { kind: 'line', from, to, w0, w1 };
+  const w = size(load.w0, 'line', 'w');
+  return { kind: 'line', ...ends, w0: w, w1: w };
+}
+
+/** A place of a load that varies, and its size there. */
+type SizedPoint = { x: number; at: Expression; value: number; size: Expression };
+
+const pointsWithin = ({ from, to }: LineLoad, cuts: ReadonlySet<number>): number[] => [
+  from,
+  ...[...cuts].filter((x) => from < x && x < to).sort((a, b) => a - b),
+  to,
+];
+
+function sizedPoint(load: LineLoad, x: number, own: Size, letters: Letters, places: Places): SizedPoint {
+  const { from, to, w0, w1 } = load;
+  const value = x === to ? w1 : w0 + ((w1 - w0) * (x - from)) / (to - from);
+  const size = x === from ? own(value, 'line', 'w') : value === 0 ? ZERO : letters.number('w', value, 'line');
+  return { x, at: places.load(x), value, size };
+}
+
+function stretches(load: LineLoad, points: readonly SizedPoint[]): LetteredLoad[] {
+  return points.slice(1).map((end, k) => {
+    const start = points[k]!;
+    return {
+      numeric: { ...load, from: start.x, to: end.x, w0: start.value, w1: end.value },
+      load: { kind: 'line', from: start.at, to: end.at, w0: start.size, w1: end.size },
+    };
+  });
 }
 
 type Sized = { load: Load; tex: string };

@@ -1,5 +1,5 @@
+import { given } from './display';
 import type { NamedBeam } from './named-beam';
-import { given } from './step';
 import { unitOf } from './symbols';
 import type { DerivationStep } from './types';
 import type { Worked } from './values';

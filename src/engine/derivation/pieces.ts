@@ -66,7 +66,7 @@ function pieceBetween(beam: NamedBeam, unknowns: readonly Unknown[], from: numbe
     s && movementOf(s.support.vertical) !== 0 ? negate(symbol(settlement(s.letter))) : ZERO;
   const root = rotation[0];
   const turn = root && movementOf(root.support.rotation) !== 0 ? symbol(turning(root.letter)) : ZERO;
-  const loads = beam.loads.flatMap(({ load }) => partOn(beam, load, from, to) ?? []);
+  const loads = beam.chartLoads.flatMap(({ load }) => partOn(beam, load, from, to) ?? []);
   return {
     from,
     to,

@@ -69,7 +69,7 @@ export function supportMomentSteps(worked: Worked): DerivationStep[] {
     Math.abs(solution.extremes.moment.min.value),
   );
   return beam.supports.flatMap((support) => {
-    const { x, at, letter } = support;
+    const { x, letter } = support;
     const isEnd = x === 0 || x === beam.beam.length;
     const isFound = unknowns.some((unknown) => unknown.kind === 'internal' && unknown.x === x);
     const [left, right] = evaluate(solution.diagrams.moment, x);
@@ -82,11 +82,13 @@ export function supportMomentSteps(worked: Worked): DerivationStep[] {
           `${letter}-${side}`,
           `Moment just ${side} of ${letter}`,
           `M_{${letter},\\mathrm{${side}}}`,
-          momentAt(beam, x, at, side),
+          momentAt(beam, unknowns, support, side),
         ),
       );
     }
-    return [moment(beam, letter, `Moment over ${letter}`, `M_{${letter}}`, momentAt(beam, x, at))];
+    return [
+      moment(beam, letter, `Moment over ${letter}`, `M_{${letter}}`, momentAt(beam, unknowns, support)),
+    ];
   });
 }
 
@@ -126,7 +128,7 @@ export function peakStep(worked: Worked): DerivationStep[] {
       id: 'largest-moment',
       title: `Largest sagging moment, ${Number(x.toFixed(3))} m from the left end`,
       left: `M(${where})`,
-      expression: momentAt(beam, x, place),
+      expression: momentAt(beam, worked.unknowns, { x, at: place }),
       value,
       kind: 'moment',
       scale: 'metre',

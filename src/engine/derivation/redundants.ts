@@ -5,7 +5,7 @@ import type { Kind } from './symbols';
 import type { DerivationStep } from './types';
 import { flexibilityTex, gapTex, moves, type Unknown } from './unknown';
 import type { Worked } from './values';
-import { type ReleasedState, releasedState, workParts, workTex } from './virtual-work';
+import { type ReleasedState, releasedStates, workParts, workTex } from './virtual-work';
 import { flexibilityTitle, gapTitle } from './words';
 
 /** The movements of the released beam by the charts where they cover it, each checked against the force method. */
@@ -13,6 +13,8 @@ export type Movements = {
   pieces: Piece[] | null;
   gaps: (Charted | null)[];
   flexibility: (row: number, column: number) => Charted | null;
+  /** The released beam under the loads (null) or a unit value of a redundant, each made when it is first asked for. */
+  states: (unit: Unknown | null) => ReleasedState;
 };
 
 /** Charts may differ from the exact integrals by rounding alone; anything more is not shown as a formula. */
@@ -36,6 +38,7 @@ export function movementsOf(worked: Worked): Movements {
       const own = charted && i === j ? withAdded(charted, ownCompliance(unknowns[i]!)) : charted;
       return checked(own, flexibility[i]![j]!);
     },
+    states: releasedStates(worked),
   };
 }
 
@@ -54,7 +57,6 @@ export const flexibilityKind = (at: Unknown, unit: Unknown): Kind =>
 /** One step for the gap at each redundant; defines its letter. */
 export function gapSteps(worked: Worked, movements: Movements): DerivationStep[] {
   const { beam, unknowns, gaps } = worked;
-  const underLoads = lazily(() => releasedState(worked, null));
   return unknowns.map((unknown, i) => {
     const charted = movements.gaps[i]!;
     const common = {
@@ -67,14 +69,44 @@ export function gapSteps(worked: Worked, movements: Movements): DerivationStep[]
     } as const;
     const step = charted
       ? calculate(beam.letters, { ...common, expression: charted.value })
-      : integrated(worked, common, unknown, null, underLoads(), gaps[i]!);
+      : integrated(worked, movements, common, unknown, null, gaps[i]!);
     beam.letters.define(gapTex(unknown), gaps[i]!, gapKind(unknown));
     return step;
   });
 }
 
-/** One step for each f_ij with i ≤ j that is not zero, and one that its mirror is the same; defines their letters. */
+/** Up to so many redundants every coefficient has a step of its own; beyond, the equations show them. */
+export const FEW = 3;
+
+/** The flexibility coefficients; defines their letters. */
 export function flexibilitySteps(worked: Worked, movements: Movements): DerivationStep[] {
+  return worked.unknowns.length <= FEW ? coefficientSteps(worked, movements) : [allCoefficients(worked)];
+}
+
+/** All f_ij as what they are, without their values. */
+function allCoefficients(worked: Worked): DerivationStep {
+  const { beam, unknowns, flexibility } = worked;
+  unknowns.forEach((at, i) => {
+    unknowns.forEach((unit, j) => {
+      beam.letters.define(flexibilityTex(at, unit), flexibility[i]![j]!, flexibilityKind(at, unit));
+    });
+  });
+  const names = { own: 'i', other: 'j', underLoads: false, isAgainst: false };
+  return {
+    id: 'flexibility',
+    title: 'Movement at every redundant for a unit value of every other',
+    symbols: `f_{ij}=f_{ji}=${workTex(beam, names)}`,
+    numbers: '',
+    value: null,
+    unit: '',
+    display: '',
+    note: 'By reciprocity either way round is the same.',
+    figure: { structure: 'unit', redundant: 0 },
+  };
+}
+
+/** One step for each f_ij with i ≤ j that is not zero, and one that its mirror is the same. */
+function coefficientSteps(worked: Worked, movements: Movements): DerivationStep[] {
   const { beam, unknowns, flexibility } = worked;
   return unknowns.flatMap((at, i) =>
     unknowns.slice(i).flatMap((unit, offset) => {
@@ -96,7 +128,7 @@ export function flexibilitySteps(worked: Worked, movements: Movements): Derivati
       } as const;
       const step = charted
         ? calculate(beam.letters, { ...common, expression: charted.value })
-        : integrated(worked, common, at, unit, releasedState(worked, unit), value);
+        : integrated(worked, movements, common, at, unit, value);
       const letter = beam.letters.define(flexibilityTex(at, unit), value, kind);
       if (i === j) return [step];
       const mirrorKind = flexibilityKind(unit, at);
@@ -119,15 +151,14 @@ type Common = Omit<Parameters<typeof sumUp>[0], 'symbols' | 'parts' | 'value'>;
 /** ∫ m M/EI dx under the loads (`other` null) or a unit value of another redundant, with every part's value. */
 function integrated(
   worked: Worked,
+  { states }: Movements,
   common: Common,
   at: Unknown,
   other: Unknown | null,
-  state: ReleasedState,
   value: number,
 ): DerivationStep {
   const against = isAgainst(at, other) ? -1 : 1;
-  const unit = releasedState(worked, at);
-  const parts = workParts(worked, unit, state, other === null).map((part) => part * against);
+  const parts = workParts(worked, states(at), states(other), other === null).map((part) => part * against);
   return sumUp({
     ...common,
     symbols: workTex(worked.beam, {
@@ -142,14 +173,6 @@ function integrated(
 }
 
 const isAgainst = (at: Unknown, other: Unknown | null): boolean => other === null && at.kind !== 'internal';
-
-function lazily<T>(make: () => T): () => T {
-  let made: { value: T } | null = null;
-  return () => {
-    made ??= { value: make() };
-    return made.value;
-  };
-}
 
 /** Right side of a redundant's equation Σ f X: δ − Δ for a reaction, −θ for an internal moment. */
 export function rightSide(worked: Worked, i: number): Expression {

@@ -182,32 +182,46 @@ export function loadMoment(load: NamedLoad, about: Expression): Expression {
 }
 
 /**
- * The moment at a place from all that acts at its left, or at its right: the side asked for, else whichever is shorter.
- * Sagging positive; just left or right of the place, where the moment jumps there.
+ * The moment at a place from what acts on its part of the beam at its left, or at its right: the side asked for, else
+ * whichever is shorter. Sagging positive; just left or right of the place, where the moment jumps there.
  */
-export function momentAt(beam: NamedBeam, x: number, at: Expression, side?: 'left' | 'right'): Expression {
-  if (side) return momentFrom(beam, x, at, side);
-  const sides = (['left', 'right'] as const).map((side) => momentFrom(beam, x, at, side));
-  return sides[0]!.length <= sides[1]!.length ? sides[0]! : sides[1]!;
+export function momentAt(
+  beam: NamedBeam,
+  unknowns: readonly Unknown[],
+  { x, at }: { x: number; at: Expression },
+  side?: 'left' | 'right',
+): Expression {
+  const part = partsOf(beam, unknowns).find(({ from, to }) => from <= x && x <= to)!;
+  if (side) return momentFrom(beam, part, x, at, side);
+  const [left, right] = (['left', 'right'] as const).map((from) => momentFrom(beam, part, x, at, from));
+  return left!.length <= right!.length ? left! : right!;
 }
 
-function momentFrom(beam: NamedBeam, x: number, at: Expression, side: 'left' | 'right'): Expression {
+function momentFrom(
+  beam: NamedBeam,
+  part: Part,
+  x: number,
+  at: Expression,
+  side: 'left' | 'right',
+): Expression {
   const tolerance = 1e-10 * beam.beam.length;
-  const [from, to] = side === 'left' ? [0, x] : [x, beam.beam.length];
-  const beyond = (place: number) => (side === 'left' ? place < x - tolerance : place > x + tolerance);
-  const actions = beam.supports.filter((s) => beyond(s.x)).flatMap((s) => reactionsOf(beam, s));
+  const isBeyond = (place: number) => (side === 'left' ? place < x - tolerance : place > x + tolerance);
+  const [from, to] = side === 'left' ? [part.from, x] : [x, part.to];
   // Seen from the left, what turns clockwise about the place makes it sag; from the right, what turns the other way.
-  const clockwise = add(
-    ...actions.map(({ tex, at: place, kind, amount }) =>
+  const actions = part.actions
+    .filter((action) => isBeyond(action.x))
+    .map(({ tex, at: place, kind, amount }) =>
       kind === 'couple'
         ? multiply(constant(-amount), symbol(tex))
-        : multiply(symbol(tex), expand(subtract(at, place))),
-    ),
-    ...beam.loads.flatMap(({ load, numeric }) => {
-      if (numeric.kind === 'couple' && !beyond(numeric.at)) return [];
-      const part = partOn(beam, load, from, to);
-      return part ? [loadMoment(part, at)] : [];
-    }),
-  );
-  return side === 'left' ? clockwise : negate(clockwise);
+        : multiply(multiply(constant(amount), symbol(tex)), expand(subtract(at, place))),
+    );
+  const loads = part.loads.flatMap((load) => {
+    if (load.kind === 'couple' && !isBeyond(beam.letters.of(load.at))) return [];
+    const within = load.kind === 'couple' || load.kind === 'point' ? load : partOn(beam, load, from, to);
+    const isOther = within?.kind === 'point' && !isBeyond(beam.letters.of(within.at));
+    return within && !isOther ? [loadMoment(within, at)] : [];
+  });
+  const clockwise = add(...actions, ...loads);
+  const [left, right] = part.moments;
+  return side === 'left' ? add(left, clockwise) : add(right, negate(clockwise));
 }

@@ -16,7 +16,7 @@ export type Unknown = {
   tex: string;
   /** Its sense against the engine's: anticlockwise and sagging positive. */
   sense: 1 | -1;
-  /** What tells its flexibility from another's: B, or Bθ where the reaction at B is a redundant too. */
+  /** What tells its flexibility from another's: B, or θB where the reaction at B is a redundant too. */
   index: string;
 };
 
@@ -62,7 +62,9 @@ export function unknownsOf(beam: NamedBeam, redundants: readonly Redundant[]): U
   });
   return named.map((unknown) => {
     const twin = named.some((other) => other !== unknown && other.letter === unknown.letter);
-    return twin && unknown.kind !== 'reaction' ? { ...unknown, index: `${unknown.letter}\\theta` } : unknown;
+    return twin && unknown.kind !== 'reaction'
+      ? { ...unknown, index: `{\\theta ${unknown.letter}}` }
+      : unknown;
   });
 }
 

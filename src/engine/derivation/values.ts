@@ -28,9 +28,15 @@ export function work(beam: NamedBeam, redundants?: readonly Redundant[]): Worked
     unknowns,
     gaps: forceMethod.gaps.map((gap, i) => gap * against[i]!),
     flexibility: forceMethod.flexibility.map((row, i) =>
-      row.map((f, j) => f * unknowns[i]!.sense * unknowns[j]!.sense),
+      row.map((f, j) => (isNothing(forceMethod, i, j) ? 0 : f * unknowns[i]!.sense * unknowns[j]!.sense)),
     ),
     imposed: forceMethod.imposed.map((movement, i) => movement * against[i]! + 0),
     values: forceMethod.values.map((value, i) => value * unknowns[i]!.sense),
   };
 }
+
+/** What rounding leaves of a coefficient that is nothing, beside the two on the diagonal. */
+const ROUNDING = 1e-13;
+
+const isNothing = ({ flexibility }: Solution['forceMethod'], i: number, j: number): boolean =>
+  Math.abs(flexibility[i]![j]!) <= ROUNDING * Math.sqrt(flexibility[i]![i]! * flexibility[j]![j]!);

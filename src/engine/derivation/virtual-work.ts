@@ -1,17 +1,31 @@
 import { solveBeam } from '../beam/index';
 import { evaluate as evaluateFormula, symbolsOf } from '../chart/index';
-import type { Beam, Load } from '../model/index';
+import type { Beam, Load, Restraint } from '../model/index';
 import { evaluate, integrate, multiply, type Piecewise } from '../polynomial/index';
 import { movementOf, type NamedBeam } from './named-beam';
-import { equilibrium } from './statics';
+import { type Equilibrium, equilibrium } from './statics';
 import { fixingSense, fixingTex, reactionTex, type Unknown } from './unknown';
 import type { Worked } from './values';
 
 /** The released beam in one state: its reactions by letter, in the derivation's senses, and its V and M. */
 export type ReleasedState = { reactions: ReadonlyMap<string, number>; shear: Piecewise; moment: Piecewise };
 
-/** Under the loads (null), or under a unit value of one redundant. */
-export function releasedState(worked: Worked, unit: Unknown | null): ReleasedState {
+/** The released beam under the loads (null) or a unit value of a redundant; each state is made once. */
+export function releasedStates(worked: Worked): (unit: Unknown | null) => ReleasedState {
+  const made = new Map<Unknown | null, ReleasedState>();
+  const equations = equilibrium(worked.beam, worked.unknowns);
+  return (unit) => {
+    const state = made.get(unit) ?? releasedState(worked, equations, unit);
+    made.set(unit, state);
+    return state;
+  };
+}
+
+function releasedState(
+  worked: Worked,
+  equations: readonly Equilibrium[],
+  unit: Unknown | null,
+): ReleasedState {
   const { beam, unknowns } = worked;
   const loadLetters = new Set(
     beam.loads.flatMap(({ load }) => {
@@ -23,11 +37,18 @@ export function releasedState(worked: Worked, unit: Unknown | null): ReleasedSta
   const values = new Map(unknowns.map((unknown) => [unknown.tex, unknown === unit ? 1 : 0]));
   const value = (tex: string) =>
     values.get(tex) ?? (unit && loadLetters.has(tex) ? 0 : beam.letters.value(tex));
-  for (const step of equilibrium(beam, unknowns)) values.set(step.tex, evaluateFormula(step.value, value));
-  const actions = beam.supports.flatMap((named): Load[] => [
-    { kind: 'point', at: named.x, p: -(values.get(reactionTex(named)) ?? 0) },
-    { kind: 'couple', at: named.x, m: fixingSense(beam, named) * (values.get(fixingTex(named)) ?? 0) },
-  ]);
+  for (const step of equations) values.set(step.tex, evaluateFormula(step.value, value));
+  // A support that does not hold rotation has no fixing moment; its letter may be that of the moment within the beam.
+  const acting = (restraint: Restraint, tex: string) =>
+    restraint.kind === 'free' ? 0 : (values.get(tex) ?? 0);
+  const actions = beam.supports.flatMap((named): Load[] => {
+    const { x, support } = named;
+    const moment = fixingSense(beam, named) * acting(support.rotation, fixingTex(named));
+    return [
+      { kind: 'point', at: x, p: -acting(support.vertical, reactionTex(named)) },
+      { kind: 'couple', at: x, m: moment },
+    ];
+  });
   const { shear, moment } = diagramsUnder(beam.beam, unit ? actions : [...beam.beam.loads, ...actions]);
   return { reactions: values, shear, moment };
 }

@@ -196,7 +196,7 @@ export function listColleagues(actor: Actor): Promise<{ name: string; email: str
   );
 }
 
-export const toJobItem = (row: JobRow): JobItem => ({
+const toJobItem = (row: JobRow): JobItem => ({
   number: row.number,
   name: row.name,
   client: row.client,

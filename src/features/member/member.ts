@@ -14,7 +14,6 @@ const parameter = z.union([
   z.record(z.string().max(40), typed),
   z.array(z.record(z.string().max(40), typed)).max(100),
 ]);
-export type TypedParameter = z.output<typeof parameter>;
 
 /** What a member's numbers follow from, besides the template that it pins. */
 const inputs = {

@@ -58,7 +58,9 @@ function boundsOf(
 const shownValues = (items: readonly SectionItem[], measure: Ranged, system: UnitSystemName): number[] =>
   items.map((item) => toShown(FIELD[measure], measureOf(item, FIELD[measure]) ?? 0, system));
 
-/** The range of depth moved by a step, its width kept. */
+const NUDGES = 10; // steps
+
+/** The range of depth moved by some steps, its width kept; an open end stays open. */
 export function nudged(
   state: PageState,
   items: readonly SectionItem[],
@@ -66,8 +68,19 @@ export function nudged(
   system: UnitSystemName,
 ): PageState {
   const bins = binsOf(shownValues(items, 'depth', system));
-  const range = shifted(rangeOf(state, 'depth', bins, system), turn * 10 * NUDGE.depth[system], bins);
-  return boundsOf(range, 'depth', bins, system).reduce(
+  const { depth_min: least, depth_max: most } = state.bounds;
+  const range = rangeOf(state, 'depth', bins, system);
+  if (least === undefined && most === undefined) return state;
+  const inner = {
+    low: least === undefined ? range.high : range.low,
+    high: most === undefined ? range.low : range.high,
+  };
+  const moved = shifted(inner, turn * NUDGES * NUDGE.depth[system], bins);
+  const ends = {
+    low: least === undefined ? bins.from : moved.low,
+    high: most === undefined ? bins.to : moved.high,
+  };
+  return boundsOf(ends, 'depth', bins, system).reduce(
     (now, [name, value]) => withBound(now, name, value),
     state,
   );

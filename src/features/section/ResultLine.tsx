@@ -1,5 +1,6 @@
 import { Button } from '@/components/ui/Button';
 import type { UnitSystemName } from '@/engine/quantity';
+import { sectionsCsv } from './csv';
 import { FIELD_WORDS } from './display';
 import type { SectionField, SectionQuery } from './query';
 import type { SectionItem } from './section';
@@ -38,7 +39,6 @@ export function ResultLine(props: ResultLineProps) {
   const { view, all, query, said, onSaid, found, csv, system } = props;
   const [count, words] = countWords(props);
   const copy = async () => {
-    const { sectionsCsv } = await import('./csv');
     await navigator.clipboard.writeText(sectionsCsv(csv.rows, csv.fields, system));
     onSaid(`${csv.rows.length} rows are copied as CSV.`);
   };

@@ -1,4 +1,4 @@
-import { unparse } from 'papaparse';
+import Papa from 'papaparse';
 import type { UnitSystemName } from '@/engine/quantity';
 import { FIELD_WORDS, toShown } from './display';
 import { measureOf, type SectionField } from './query';
@@ -26,7 +26,7 @@ export function sectionsCsv(
     }),
     item.computed.join(' '),
   ]);
-  return unparse([['designation', 'table', 'edition', ...heads, 'computed'], ...rows], {
+  return Papa.unparse([['designation', 'table', 'edition', ...heads, 'computed'], ...rows], {
     escapeFormulae: true,
   });
 }

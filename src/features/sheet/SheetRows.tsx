@@ -18,7 +18,7 @@ interface SheetRowsProps {
 export function SheetRows({ blocks, system, width }: SheetRowsProps) {
   return blocks.map((block, index) => (
     // biome-ignore lint/suspicious/noArrayIndexKey: a sheet is printed once and its blocks have no other identity
-    <SheetRow key={index} block={block}>
+    <SheetRow key={index} block={block} leads={isLead(block) || index >= blocks.length - WITH_SIGNATURES}>
       {block.kind === 'drawing' ? (
         <SheetDrawing block={block} format={DRAWING_FORMATS[system]} width={width} />
       ) : (
@@ -29,13 +29,22 @@ export function SheetRows({ blocks, system, width }: SheetRowsProps) {
 }
 
 /** Stays on the page of what follows it. */
-const leads = (block: SheetBlock): boolean =>
+const isLead = (block: SheetBlock): boolean =>
   block.kind === 'heading' || (block.kind === 'text' && block.text.endsWith(':'));
 
-function SheetRow({ block, children }: { block: SheetBlock; children: ReactNode }) {
+/** Signatures do not stand on a page alone: the last rows go with them. */
+const WITH_SIGNATURES = 3;
+
+interface SheetRowProps {
+  readonly block: SheetBlock;
+  readonly leads: boolean;
+  readonly children: ReactNode;
+}
+
+function SheetRow({ block, leads, children }: SheetRowProps) {
   const { kind, source, results = [] } = block;
   return (
-    <div className="cs-row" data-kind={kind} data-leads={leads(block) || undefined}>
+    <div className="cs-row" data-kind={kind} data-leads={leads || undefined}>
       {kind === 'drawing' ? (
         children
       ) : (

@@ -1,7 +1,6 @@
 import { QuantityField } from '@/components/ui/QuantityField';
-import type { UnitSystemName } from '@/engine/quantity';
-import { formatQuantity } from '@/engine/quantity';
-import { defaultEi, type Template } from '@/engine/template';
+import { formatNumber, toUnit, UNIT_SYSTEMS, type UnitSystemName } from '@/engine/quantity';
+import type { Template } from '@/engine/template';
 import type { PageValues, PickedSection } from './page';
 import { SectionPick } from './SectionPick';
 import { unitsOffered } from './units';
@@ -19,7 +18,6 @@ interface StiffnessFieldsProps {
 export function StiffnessFields(props: StiffnessFieldsProps) {
   const { template, values, system, fault, sectionFault, onChange } = props;
   const { section, ei } = values;
-  const own = formatQuantity(defaultEi(template), ei.unit);
   const affects = template.stiffness.affects.join(', ');
   const locked = section ? `from ${section.values.designation}, ${section.materialName}` : undefined;
   const shown = section ? { text: plainNumber(section, ei.unit), unit: ei.unit } : ei;
@@ -30,7 +28,7 @@ export function StiffnessFields(props: StiffnessFieldsProps) {
           symbol="EI"
           label="Stiffness"
           dimension="bending_stiffness"
-          entry={shown.text === '' ? { ...shown, text: stripUnit(own) } : shown}
+          entry={shown}
           units={unitsOffered('bending_stiffness', ei.unit)}
           locked={locked}
           error={fault}
@@ -48,7 +46,5 @@ export function StiffnessFields(props: StiffnessFieldsProps) {
   );
 }
 
-const stripUnit = (text: string): string => text.split('\u00a0')[0] ?? text;
-
 const plainNumber = ({ resolved }: PickedSection, unit: string): string =>
-  stripUnit(formatQuantity(resolved.ei, unit, { significant: 4 }));
+  formatNumber(toUnit(resolved.ei, unit), UNIT_SYSTEMS.metric.bending_stiffness);

@@ -108,7 +108,11 @@ function workedAt(
   const at = (given: Readonly<Record<string, unknown>>, ei: string, section: PickedSection | null) =>
     evaluatePage(
       template,
-      { raw: toRaw(template, given, { system }), ei: { text: ei, unit: '' }, section },
+      {
+        raw: toRaw(template, given, { system }),
+        ei: { text: ei === '' ? template.stiffness.default_ei : ei, unit: '' },
+        section,
+      },
       system,
     );
   const asked = at(parameters, stiffness.ei, stiffness.section);

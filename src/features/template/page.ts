@@ -60,7 +60,7 @@ export interface PageValues {
   readonly section: PickedSection | null;
 }
 
-/** The template at the page's values. An empty stiffness is the template's own. */
+/** The template at the page's values. */
 export const evaluatePage = (
   template: Template,
   { raw, ei, section }: PageValues,
@@ -70,13 +70,10 @@ export const evaluatePage = (
     template,
     {
       parameters: toParameters(template, raw),
-      ...(section ? { section: section.resolved } : stiffnessText(ei)),
+      ...(section ? { section: section.resolved } : { ei: entryText(ei, 'bending_stiffness') }),
     },
     { system },
   );
-
-const stiffnessText = (ei: PageValues['ei']): { ei?: string } =>
-  ei.text.trim() === '' ? {} : { ei: entryText(ei, 'bending_stiffness') };
 
 const DAY = new Intl.DateTimeFormat('en-GB', {
   day: 'numeric',

@@ -103,12 +103,15 @@ function toRawRow(
 export const newRow = ({ columns }: RowsParameter, system: UnitSystemName): RawRow =>
   toRawRow(columns, {}, system);
 
-/** "7.2 m" as 7.2 beside m; a text in another form stays as it is, beside the unit that the field starts in. */
 function toEntry(parameter: QuantityParameter, given: unknown, system: UnitSystemName): Entry {
   const shown = unitOf(parameter, system);
   if (typeof given === 'number') return { text: numberText(given, shown), unit: shown };
-  const text = typeof given === 'string' ? given : '';
-  for (const unit of [shown, ...unitsOffered(parameter.dimension, shown)])
+  return readEntry(typeof given === 'string' ? given : '', parameter.dimension, shown);
+}
+
+/** "7.2 m" as 7.2 beside m; a text in another form stays as it is, beside the unit that the field starts in. */
+export function readEntry(text: string, dimension: DimensionName, shown: string): Entry {
+  for (const unit of [shown, ...unitsOffered(dimension, shown)])
     if (unit !== '' && text.endsWith(` ${unit}`)) return { text: text.slice(0, -unit.length - 1), unit };
   return { text, unit: shown };
 }

@@ -1,8 +1,9 @@
 import { useCallback, useEffect, useMemo, useRef, useState } from 'react';
+import { UNIT_SYSTEMS } from '@/engine/quantity';
 import { writeValues } from './address';
 import type { TemplateEvaluation } from './evaluate';
 import { evaluatePage, type PageValues, type TemplatePageData } from './page';
-import { type Entry, type RawValue, toRaw } from './raw';
+import { type Entry, entryText, type RawValue, readEntry, toRaw } from './raw';
 import { type Release, releaseKey } from './release';
 import { useRestedValue } from './use-live';
 
@@ -12,16 +13,17 @@ interface Good {
   readonly evaluation: TemplateEvaluation;
 }
 
-const EI_UNIT = { metric: 'kNm2', us: 'kip-in2' } as const;
+const eiEntry = ({ system }: TemplatePageData, text: string): Entry =>
+  readEntry(text, 'bending_stiffness', UNIT_SYSTEMS[system].bending_stiffness.unit);
 
 /** What a person has set on a template's page, the result of it, and the address that says it. */
 export function useTemplatePage(data: TemplatePageData) {
   const { template, system } = data;
-  const ownEi = useMemo((): Entry => ({ text: '', unit: EI_UNIT[system] }), [system]);
+  const ownEi = useMemo(() => eiEntry(data, template.stiffness.default_ei), [data, template]);
   const [values, setValues] = useState(
     (): PageValues => ({
       raw: toRaw(template, data.parameters, { system }),
-      ei: { text: data.ei, unit: ownEi.unit },
+      ei: data.ei === '' ? ownEi : eiEntry(data, data.ei),
       section: data.section,
     }),
   );
@@ -72,8 +74,10 @@ export class NoResultAtDefaults extends Error {
   }
 }
 
-function atDefaults({ template, system }: TemplatePageData): Good {
-  const values = { raw: toRaw(template, {}, { system }), ei: { text: '', unit: '' }, section: null };
+function atDefaults(data: TemplatePageData): Good {
+  const { template, system } = data;
+  const ei = eiEntry(data, template.stiffness.default_ei);
+  const values = { raw: toRaw(template, {}, { system }), ei, section: null };
   const outcome = evaluatePage(template, values, system);
   if (outcome.ok) return { values, evaluation: outcome.evaluation };
   throw new NoResultAtDefaults(template.slug, outcome.errors[0]?.message ?? '');
@@ -84,7 +88,8 @@ function queryOf(
   { raw, ei, section }: PageValues,
   releases: readonly Release[] | null,
 ): string {
-  const text = ei.text.trim() === '' || section ? '' : `${ei.text} ${ei.unit}`.trim();
+  const said = entryText(ei, 'bending_stiffness');
+  const text = said === template.stiffness.default_ei || section ? '' : said;
   const stiffness = {
     ei: text,
     section: section?.values.designation ?? '',

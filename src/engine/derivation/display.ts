@@ -1,0 +1,34 @@
+import { formatNumber, toUnit } from '../quantity/index';
+import { numberTex, toTex } from './symbols';
+
+/** Figures of a result, and of the numbers it is shown to come from unless they need more. */
+export const FIGURES = 4;
+/** A result this small beside its largest term is what is left of a difference, and shows that term's decimals. */
+const REMAINDER = 1e-3;
+
+/**
+ * An SI value in the unit, as the screen shows it: to four figures, all of a whole number's; or, where its terms cancel,
+ * to the decimals that four figures of the largest of them have.
+ */
+export function display(si: number, unit: string, largest = Math.abs(si)): string {
+  return shown(toUnit(si, unit), Math.abs(toUnit(largest, unit)), FIGURES);
+}
+
+/** The same for maths mode, with the unit; to as many figures as `like`, a display of it in another unit, has. */
+export function withUnit(si: number, unit: string, largest = Math.abs(si), like = ''): string {
+  const figures = Math.max(FIGURES, like.replace(/[.,].*/, '').replaceAll(/\D/g, '').length);
+  const text = shown(toUnit(si, unit), Math.abs(toUnit(largest, unit)), figures);
+  return `${toTex(text)}\\,\\mathrm{${unitTex(unit)}}`;
+}
+
+function shown(value: number, reference: number, figures: number): string {
+  if (Math.abs(value) > REMAINDER * reference) return formatNumber(value, { significant: figures });
+  const places = reference === 0 ? 0 : Math.max(0, figures - 1 - Math.floor(Math.log10(reference)));
+  return formatNumber(Math.abs(value) < 0.5 * 10 ** -places ? 0 : value, { places });
+}
+
+/** A value as it was given, with its unit, for maths mode. */
+export const given = (si: number, unit: string): string =>
+  `${numberTex(toUnit(si, unit))}\\,\\mathrm{${unitTex(unit)}}`;
+
+const unitTex = (unit: string): string => unit.replace(/2$/, '^2');

@@ -1,0 +1,86 @@
+import katex from 'katex';
+import { describe, expect, test } from 'vitest';
+import { solveBeam } from '@/engine/beam/index';
+import { type DerivationStep, derive } from '@/engine/derivation/index';
+import { type Beam, type BeamDocument, readBeam } from '@/engine/model/index';
+import { randomBeam } from '../support/random-beam';
+import { readShown, recalculate } from '../support/tex-arithmetic';
+
+const BEAMS = 120;
+
+/** Every other one plain; none of more than eight redundants in a row would make the test slow and prove nothing new. */
+function* beams(count: number): Generator<{ seed: number; beam: Beam }> {
+  for (let seed = 20_001, found = 0; found < count; seed++) {
+    const reading = readBeam(seed % 2 === 0 ? randomBeam(seed) : plain(randomBeam(seed)));
+    if (!reading.ok) continue;
+    found++;
+    yield { seed, beam: reading.value };
+  }
+}
+
+/** The same beam of one EI, that does not shear, on rigid supports: where the charts have most to say. */
+function plain({ segments: _, supports, ...rest }: BeamDocument): BeamDocument {
+  const rigid = supports
+    .filter(({ kind, kv }) => kind !== 'guided' || kv === undefined)
+    .map(({ kv: _kv, kr: _kr, ...support }) =>
+      support.kind === 'free' ? { ...support, kind: 'roller' as const } : support,
+    )
+    .map(({ at, kind, rise }) => ({ at, kind, ...(rise !== undefined && kind !== 'guided' && { rise }) }));
+  return { ...rest, ei: 2e7, supports: rigid };
+}
+
+/** Strict: a warning is an error. */
+function parse(tex: string): void {
+  katex.renderToString(tex, { throwOnError: true, strict: 'error', displayMode: true });
+}
+
+function checkStep(step: DerivationStep, where: string): 'recalculated' | 'listed' {
+  parse(step.symbols);
+  if (step.numbers !== '') parse(step.numbers);
+  if (step.value === null || step.numbers === '') return 'listed';
+  const shown = readShown(step.display);
+  const { arithmetic, result } = recalculate(step.numbers, step.unit);
+  const off = Math.abs(arithmetic - shown.value);
+  expect(
+    off,
+    `${where} ${step.id}: ${step.numbers} is shown as ${step.display} ${step.unit}`,
+  ).toBeLessThanOrEqual(0.5001 * shown.lastDigit);
+  if (result !== null) expect(Math.abs(result - shown.value)).toBeLessThanOrEqual(1.01 * shown.lastDigit);
+  return 'recalculated';
+}
+
+describe(`derivations of ${BEAMS} random beams`, () => {
+  test('every TeX string parses in strict mode, and every number recalculates', { timeout: 300_000 }, () => {
+    const counts = { recalculated: 0, listed: 0 };
+    const ids = new Map<string, number>();
+    let charted = 0;
+    for (const { seed, beam } of beams(BEAMS)) {
+      const steps = derive({ beam });
+      expect(new Set(steps.map(({ id }) => id)).size, `seed ${seed}: step ids are unique`).toBe(steps.length);
+      for (const step of steps) {
+        counts[checkStep(step, `seed ${seed}`)]++;
+        charted += step.charts ? 1 : 0;
+        const kind = step.id.split('-')[0]!;
+        ids.set(kind, (ids.get(kind) ?? 0) + 1);
+      }
+      if (beam.degree > 0) expect(steps.some(({ key }) => key)).toBe(true);
+    }
+    console.info(JSON.stringify({ ...counts, charted, ...Object.fromEntries(ids) }));
+    expect(charted).toBeGreaterThan(100);
+  });
+
+  test('the reactions that a derivation finds are the solver’s', { timeout: 300_000 }, () => {
+    for (const { seed, beam } of beams(100)) {
+      const { reactions } = solveBeam(beam);
+      const order = beam.supports.map((s, index) => ({ x: s.at, index })).sort((a, b) => a.x - b.x);
+      const largest = Math.max(...reactions.map(({ vertical }) => Math.abs(vertical)));
+      for (const step of derive({ beam })) {
+        const letter = /^equilibrium-R([A-Z])$/.exec(step.id)?.[1];
+        if (!letter) continue;
+        const { index } = order[letter.charCodeAt(0) - 'A'.charCodeAt(0)]!;
+        const off = Math.abs(step.value! - reactions[index]!.vertical);
+        expect(off, `seed ${seed}, R_${letter}`).toBeLessThanOrEqual(1e-9 * largest);
+      }
+    }
+  });
+});

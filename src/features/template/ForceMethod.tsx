@@ -12,7 +12,7 @@ import { useLater, useNear } from './use-live';
 import { stepTex, type WorkedSteps } from './worked';
 
 /** A beam that was solved, with the letters of its template. */
-export interface SolvedCase {
+interface SolvedCase {
   readonly beam: Beam;
   readonly instance: Pick<Instance, 'dimensions' | 'loadNames'>;
   readonly solution: Solution;

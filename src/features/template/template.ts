@@ -102,7 +102,7 @@ export const searchTexts = (row: TemplateRow, { parameters }: Pick<Template, 'pa
 ];
 
 /** A template that was checked has a beam at its defaults; one that was not is our mistake. */
-export class UndrawableTemplate extends Error {
+class UndrawableTemplate extends Error {
   constructor(slug: string, why: string) {
     super(`${slug} has no beam at its defaults: ${why}`);
     this.name = 'UndrawableTemplate';
@@ -121,7 +121,7 @@ export function toSchematic(template: Template): SchematicView {
 }
 
 /** A field of the parameter schedule: its numbers in SI, its texts in the unit that it shows. */
-export type QuantityFieldView = {
+type QuantityFieldView = {
   kind: 'quantity';
   symbol: string;
   tex: string;
@@ -140,7 +140,7 @@ export type ParameterFieldView =
   | QuantityFieldView
   | Exclude<Parameter, { kind: 'quantity' | 'rows' }>
   | (Omit<Extract<Parameter, { kind: 'rows' }>, 'columns'> & { columns: RowColumnView[] });
-export type RowColumnView =
+type RowColumnView =
   | QuantityFieldView
   | Exclude<Extract<Parameter, { kind: 'rows' }>['columns'][number], { kind: 'quantity' }>;
 

@@ -67,7 +67,7 @@ function useGood(data: TemplatePageData, values: PageValues, evaluation: Templat
 }
 
 /** A template that was checked has a result at its defaults; one that was not is our mistake. */
-export class NoResultAtDefaults extends Error {
+class NoResultAtDefaults extends Error {
   constructor(slug: string, why: string) {
     super(`${slug} has no result at its defaults: ${why}`);
     this.name = 'NoResultAtDefaults';

@@ -89,7 +89,7 @@ export const FIELD_WORDS: Readonly<Record<SectionField, FieldWords>> = {
 };
 
 /** The letters of the axes; the same letter means opposite axes in Europe and America. */
-export const AXES = { en: { major: 'y', minor: 'z' }, us: { major: 'x', minor: 'y' } } as const;
+const AXES = { en: { major: 'y', minor: 'z' }, us: { major: 'x', minor: 'y' } } as const;
 export type AxisLetters = (typeof AXES)[keyof typeof AXES];
 
 export const axesOf = (system: UnitSystemName): AxisLetters => AXES[system === 'us' ? 'us' : 'en'];

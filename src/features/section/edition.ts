@@ -27,7 +27,7 @@ export type EditionView = z.output<typeof editionDocument> & {
   readonly history: readonly EditionLine[];
 };
 
-export type EditionLine = {
+type EditionLine = {
   readonly edition: number;
   readonly date: string;
   readonly by: string;

@@ -9,7 +9,7 @@ import type { SectionRow, SectionTableMeta } from './section';
 /** `rows` are those without an error. `faults` of a table that is read are warnings and notes. */
 export type SectionTableReading = { ok: boolean; rows: SectionRow[]; faults: ImportFault[] };
 
-export const MAX_IMPORT_ROWS = 10_000;
+const MAX_IMPORT_ROWS = 10_000;
 
 /** Two rows of one key: the same values are one row, others contradict each other. */
 function dropDuplicates(rows: readonly { line: number; row: SectionRow }[], column: string) {

@@ -94,7 +94,7 @@ export const sectionQueryFields = {
 export const sectionPlace = z.tuple([z.int(), z.number().nullable(), z.string(), z.string()]).readonly();
 export type SectionPlace = z.output<typeof sectionPlace>;
 
-export type SectionRange = { field: SectionField; min?: number; max?: number };
+type SectionRange = { field: SectionField; min?: number; max?: number };
 export type SectionQuery = {
   q: string;
   table: string | null;

@@ -10,7 +10,7 @@ const page = z.object({
 export type SectionPage = z.output<typeof page>;
 
 /** The sections could not be read: said to the person, with what to do. */
-export class SectionsUnread extends Error {
+class SectionsUnread extends Error {
   constructor(status?: number, options?: ErrorOptions) {
     super(
       status === 401

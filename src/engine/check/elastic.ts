@@ -1,6 +1,6 @@
 import type { UnitSystemName } from '../quantity/index';
 import type { Criteria } from './criteria';
-import { texFigure } from './figure';
+import { texFigure, texQuotient } from './figure';
 import type { Arrangement, CheckRow, ElasticSection } from './types';
 
 /** The largest |value| of V or M over every arrangement: the first of equals, and the leftmost place it is reached. */
@@ -42,7 +42,7 @@ export function bendingCheck(
     combination: governing.combination,
     at: governing.at,
     symbols: '\\sigma = \\frac{|M|}{W_{el}} \\le k\\,f',
-    numbers: `\\frac{${texFigure(Math.abs(governing.value), 'moment', system)}}{${texFigure(section.elasticModulus, 'section_modulus', system)}} = ${texFigure(demand, 'stress', system)} \\le ${strength.bending.toPrecision(4)} \\times ${texFigure(section.bendingStrength, 'stress', system)}`,
+    numbers: `${texQuotient({ value: Math.abs(governing.value), purpose: 'moment' }, { value: section.elasticModulus, purpose: 'section_modulus' }, 'stress', system)} \\le ${strength.bending.toPrecision(4)} \\times ${texFigure(section.bendingStrength, 'stress', system)}`,
   };
 }
 
@@ -72,6 +72,6 @@ export function shearCheck(
     combination: governing.combination,
     at: governing.at,
     symbols: '\\tau = \\frac{|V|\\,Q}{I\\,t} \\le k\\,f',
-    numbers: `\\frac{${texFigure(Math.abs(governing.value), 'force', system)}}{${texFigure(section.shearAreaAtAxis, 'area', system)}} = ${texFigure(demand, 'stress', system)} \\le ${strength.shear.toPrecision(4)} \\times ${texFigure(section.shearStrength, 'stress', system)}`,
+    numbers: `${texQuotient({ value: Math.abs(governing.value), purpose: 'force' }, { value: section.shearAreaAtAxis, purpose: 'area' }, 'stress', system)} \\le ${strength.shear.toPrecision(4)} \\times ${texFigure(section.shearStrength, 'stress', system)}`,
   };
 }

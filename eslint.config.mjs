@@ -123,7 +123,7 @@ export default [
               message: 'The engine is pure',
             },
             {
-              regex: String.raw`^@/engine/[a-z]+/(?!parse$)`,
+              regex: '^@/engine/[a-z]+/(?!parse$)',
               message: 'Another engine module is entered through its index.ts',
             },
           ],

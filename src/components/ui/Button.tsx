@@ -1,7 +1,7 @@
 import { type ComponentProps, useId } from 'react';
 
-export type ButtonTone = 'inverted' | 'outlined' | 'text';
-export type ButtonSize = 'small' | 'regular' | 'block';
+type ButtonTone = 'inverted' | 'outlined' | 'text';
+type ButtonSize = 'small' | 'regular' | 'block';
 
 interface Looks {
   tone?: ButtonTone;
@@ -25,7 +25,7 @@ const SIZES: Record<ButtonSize, string> = {
 
 const OFF = 'border-dashed border-ink-2 text-ink-2 hatch-off cursor-not-allowed';
 
-export function buttonClass({ tone = 'outlined', size = 'regular' }: Looks, off = false) {
+function buttonClass({ tone = 'outlined', size = 'regular' }: Looks, off = false) {
   const padding = tone === 'text' ? 'min-h-26' : SIZES[size];
   return [
     'inline-flex items-center justify-center gap-9 font-semibold leading-20 no-underline',

@@ -88,7 +88,7 @@ export function TextField({ label, help, helpHref, error, id, rows = 3, ...area 
   );
 }
 
-export interface Choice {
+interface Choice {
   value: string;
   label: string;
   /** Why it cannot be chosen now. */

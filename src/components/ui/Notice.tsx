@@ -1,6 +1,6 @@
 import type { ReactNode } from 'react';
 
-export interface NoticeChange {
+interface NoticeChange {
   name: string;
   before: string;
   after: string;

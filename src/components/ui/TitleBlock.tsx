@@ -99,7 +99,7 @@ interface CompartmentProps {
   signed?: boolean;
 }
 
-export function Compartment({
+function Compartment({
   span,
   label,
   value,

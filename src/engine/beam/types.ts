@@ -13,7 +13,7 @@ export type Extremes = Record<'shear' | 'moment' | 'slope' | 'deflection', { max
 /** Vertical N, positive up; moment N·m, anticlockwise on the beam; 0 where unrestrained. */
 export type Reaction = { at: number; vertical: number; moment: number };
 
-export type ForceMethod = {
+type ForceMethod = {
   redundants: Redundant[];
   /** Every component that may be released alone. */
   eligible: Redundant[];

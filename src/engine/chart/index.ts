@@ -9,7 +9,6 @@ export {
   negate,
   oriented,
   power,
-  substitute,
   subtract,
   symbol,
   symbolsOf,
@@ -17,9 +16,9 @@ export {
 } from './expression';
 export { formula } from './formula';
 export type { NamedLoad } from './load';
-export { CHART, type ChartCase, type Curve, chart, type Movement, type Source } from './register';
+export { CHART, type Movement } from './register';
 export { chartTerms, movementTerms, type Released, type SupportMovements } from './released';
 export type { Setting } from './setting';
-export { cut, resultant, type Stretch } from './stretch';
+export { cut, resultant } from './stretch';
 export { type ChartTerm, total } from './term';
-export { type Atom, SYMBOLS, symbolTex, texOf, type Writer } from './tex';
+export { texOf, type Writer } from './tex';

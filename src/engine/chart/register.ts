@@ -3,9 +3,9 @@ import { formula } from './formula';
 
 /** Deflection, positive down, and its slope along x, positive clockwise: what the printed charts mean by Δ and θ. */
 export type Movement = 'deflection' | 'slope';
-export type Curve = Readonly<Record<Movement, Expression>>;
+type Curve = Readonly<Record<Movement, Expression>>;
 
-export type Source = { work: string; edition: string; table: string; entry: string; fromMemory: boolean };
+type Source = { work: string; edition: string; table: string; entry: string; fromMemory: boolean };
 
 /**
  * One published closed form. x is measured from the fixed end of a cantilever, or from the left support of a simple

@@ -35,7 +35,7 @@ function movementIn(region: Region, deflection: Piecewise): { value: number; at:
 }
 
 /** The limit of a region, m: its length over the ratio, or the absolute cap where that is lower. */
-export function allowedMovement(limit: DeflectionLimit, { kind, from, to }: Region): number {
+function allowedMovement(limit: DeflectionLimit, { kind, from, to }: Region): number {
   const length = to - from;
   const byRatio =
     kind === 'span' ? length / limit.span_ratio : (length * limit.overhang_factor) / limit.overhang_ratio;

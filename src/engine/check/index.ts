@@ -6,7 +6,6 @@ export {
   type DeflectionLimit,
   LOAD_GROUP_NAMES,
   LOAD_GROUPS,
-  type LoadGroup,
 } from './criteria';
 export { checkMember } from './member';
 export { letteredSupports, regionsOf, supportLetter } from './regions';
@@ -17,6 +16,5 @@ export type {
   ElasticSection,
   Finding,
   MemberChecks,
-  Region,
   ServiceArrangement,
 } from './types';

@@ -2,10 +2,10 @@ import { DIMENSIONS, type Dimension } from './dimension';
 
 export const INCH = 0.0254; // m, exact: 1959 international yard and pound agreement
 export const FOOT = 0.3048; // m, exact: 12 in
-export const POUND = 0.45359237; // kg, exact: the same agreement
+const POUND = 0.45359237; // kg, exact: the same agreement
 export const STANDARD_GRAVITY = 9.80665; // m/s², exact: 3rd General Conference on Weights and Measures, 1901
-export const POUND_FORCE = POUND * STANDARD_GRAVITY; // N
-export const KIP = 1000 * POUND_FORCE; // N
+const POUND_FORCE = POUND * STANDARD_GRAVITY; // N
+const KIP = 1000 * POUND_FORCE; // N
 
 /** One reading of a unit symbol: SI value of 1, dimension, and the power of an angle in it. */
 export type UnitValue = { readonly factor: number; readonly dimension: Dimension; readonly angle: number };

@@ -46,8 +46,6 @@ export const DIMENSIONS = {
 export type DimensionName = keyof typeof DIMENSIONS;
 export const DIMENSION_NAMES = Object.keys(DIMENSIONS) as DimensionName[];
 
-export const isDimensionName = (text: string): text is DimensionName => Object.hasOwn(DIMENSIONS, text);
-
 /** The name in words, with its article: "a line load", "an area". */
 export const DIMENSION_WORDS: Readonly<Record<DimensionName, string>> = {
   length: 'a length',

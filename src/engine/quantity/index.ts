@@ -1,4 +1,4 @@
-export { FOOT, INCH, KIP, POUND, POUND_FORCE, STANDARD_GRAVITY } from './atoms';
+export { FOOT, INCH, STANDARD_GRAVITY } from './atoms';
 export {
   DIMENSION_NAMES,
   DIMENSION_WORDS,
@@ -8,7 +8,6 @@ export {
   divideDimensions,
   equalDimensions,
   isDimensionless,
-  isDimensionName,
   multiplyDimensions,
   nameDimension,
   raiseDimension,
@@ -25,13 +24,6 @@ export {
   toUnit,
   UnknownUnit,
 } from './format';
-export { type QuantityFaultCode, type QuantityReading, type ReadOptions, readQuantity } from './read';
-export {
-  type Display,
-  PURPOSES,
-  type Purpose,
-  type Rounding,
-  UNIT_SYSTEMS,
-  type UnitSystemName,
-} from './system';
-export { type UnitFault, unitFactor, unitText } from './unit';
+export { type QuantityReading, readQuantity } from './read';
+export { type Purpose, type Rounding, UNIT_SYSTEMS, type UnitSystemName } from './system';
+export { unitFactor, unitText } from './unit';

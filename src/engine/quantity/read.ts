@@ -5,7 +5,7 @@ import { NUMBER_PATTERN, plainText, readNumber } from './number';
 import { UNIT_SYSTEMS } from './system';
 import { unitFactor, unitText } from './unit';
 
-export type QuantityFaultCode =
+type QuantityFaultCode =
   | 'empty'
   | 'not_a_number'
   | 'unit_missing'

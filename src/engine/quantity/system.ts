@@ -5,7 +5,7 @@ export type Rounding = { readonly significant?: number; readonly places?: number
 export type Display = Rounding & { readonly unit: string };
 
 /** What a figure is for, where the dimension alone does not decide its unit or its rounding. */
-export const PURPOSES = [
+const PURPOSES = [
   'position',
   'deflection',
   'section_size',

@@ -14,10 +14,10 @@ export type TubeDimensions = {
   ro: number;
   ri: number;
 };
-export type RoundTubeDimensions = { shape: 'chs'; d: number; t: number };
+type RoundTubeDimensions = { shape: 'chs'; d: number; t: number };
 /** Solid rectangle: sawn timber, glued laminated timber, bar. */
-export type RectangleDimensions = { shape: 'rectangle'; h: number; b: number };
-export type RoundBarDimensions = { shape: 'round'; d: number };
+type RectangleDimensions = { shape: 'rectangle'; h: number; b: number };
+type RoundBarDimensions = { shape: 'round'; d: number };
 
 /** What is measured of a section, in m. h is along the web (or upright), b across it. */
 export type SectionDimensions =

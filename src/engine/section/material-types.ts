@@ -1,5 +1,5 @@
 /** Where the values come from. `fromMemory`: not yet compared with the printed standard; say so wherever they are used. */
-export type MaterialSource = {
+type MaterialSource = {
   standard: string;
   edition: string;
   clause: string;
@@ -21,10 +21,10 @@ export type MaterialCommon = {
 
 /** Strength of steel up to a thickness, m; without limit where the standard has none. */
 export type StrengthBand = { upTo: number; fy: number; fu: number };
-export type Steel = MaterialCommon & { kind: 'steel'; strength: readonly StrengthBand[] };
+type Steel = MaterialCommon & { kind: 'steel'; strength: readonly StrengthBand[] };
 
 /** Characteristic strengths of a European strength class, Pa. */
-export type EuropeanTimber = MaterialCommon & {
+type EuropeanTimber = MaterialCommon & {
   kind: 'timber_en';
   product: 'solid' | 'glulam';
   fm: number;
@@ -37,7 +37,7 @@ export type EuropeanTimber = MaterialCommon & {
 };
 
 /** Reference design values of the NDS, Pa. `fbReversed`: tension on the weaker side of a glulam. */
-export type AmericanTimber = MaterialCommon & {
+type AmericanTimber = MaterialCommon & {
   kind: 'timber_nds';
   product: 'sawn' | 'glulam';
   fb: number;

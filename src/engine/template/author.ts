@@ -14,7 +14,7 @@ const writtenExpression = z.string().transform((text, context): Expression => {
 });
 
 /** A template as an author writes it, and as data/templates holds it: every expression is text. */
-export const writtenTemplate = templateSchema(writtenExpression);
+const writtenTemplate = templateSchema(writtenExpression);
 
 /**
  * The template with a tree beside every expression, or every fault at its place: of form and syntax first, and of

@@ -33,7 +33,7 @@ export type Arrangement = (typeof ARRANGEMENTS)[number];
 export const LOAD_KINDS = ['uniform', 'point', 'triangular', 'couple', 'settlement', 'temperature'] as const;
 export type LoadKind = (typeof LOAD_KINDS)[number];
 
-export const AFFECTED = ['reactions', 'shear', 'moment', 'slope', 'deflection'] as const;
+const AFFECTED = ['reactions', 'shear', 'moment', 'slope', 'deflection'] as const;
 
 const LONGEST_EXPRESSION = 300; // as parse.ts
 const expression = z.strictObject({
@@ -152,9 +152,8 @@ export const templateDocument = templateSchema(expression);
 
 export type Template = z.infer<typeof templateDocument>;
 export type Rule = Template['rules'][number];
-export type Result = Template['results'][number];
+type Result = Template['results'][number];
 export type Selector = Result['quantity'];
 export type ProofCase = Template['proof_cases'][number];
 export type Expectation = ProofCase['expect'][number];
 export type Source = Template['sources'][number];
-export type StatedValues = ProofCase['parameters'];

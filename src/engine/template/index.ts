@@ -3,49 +3,15 @@
  * Two entries stay out of it, because a browser never needs them: `document` (the schema, with Zod) and `parse` and
  * `author` (text to trees, with the maths library).
  */
-export { checkTemplate, type TemplateFault } from './check';
-export { dimensionOf, type Kind, type KindReading, type Kinds } from './dimension';
-export type {
-  Arrangement,
-  LoadKind,
-  ProofCase,
-  Result,
-  Rule,
-  Selector,
-  Source,
-  Template,
-} from './document';
-export {
-  BrokenExpression,
-  evaluateExpression,
-  evaluateNumber,
-  evaluateTruth,
-  type Scalar,
-  type Scope,
-} from './evaluate';
-export {
-  type Dimensioned,
-  defaultEi,
-  type Instance,
-  type InstanceOptions,
-  type InstanceReading,
-  instantiate,
-} from './instance';
+export { dimensionOf, type KindReading } from './dimension';
+export type { Arrangement, LoadKind, Selector, Source, Template } from './document';
+export { evaluateNumber, evaluateTruth } from './evaluate';
+export { type Dimensioned, type Instance, type InstanceOptions, instantiate } from './instance';
 export type { NamedLoad } from './loads';
-export { limitsOf, type ParameterFault, unitOf, type ValueOptions } from './measured';
-export type { ChoiceParameter, Column, Parameter, QuantityParameter, RowsParameter, Severity } from './parts';
-export { type ProofCheck, type ProofResult, runProofCases } from './proof';
-export { judgeRules, type Known, purposeOf, type RuleOutcome } from './rules';
-export { letterOf, ruleKinds, scopeOf } from './scope';
-export { type Selected, select, selectorDimension, selectorName } from './select';
-export { type Expression, symbolsOf, type Tree } from './tree';
-export {
-  type Parts,
-  type Row,
-  readParameters,
-  totalOf,
-  type Value,
-  type Values,
-  type ValuesReading,
-} from './values';
-export { writeExpression } from './write';
+export { limitsOf, type ParameterFault, unitOf } from './measured';
+export type { Column, Parameter, QuantityParameter, RowsParameter, Severity } from './parts';
+export { type ProofResult, runProofCases } from './proof';
+export { judgeRules, type RuleOutcome } from './rules';
+export { ruleKinds } from './scope';
+export { select, selectorDimension } from './select';
+export { type Row, readParameters, type Value } from './values';

@@ -151,7 +151,7 @@ function beamOf(template: Template, scope: Scope, options: InstanceOptions): Omi
 }
 
 /** The template's own choice of what to release. */
-export const redundantsOf = (template: Template, scope: Scope): Redundant[] =>
+const redundantsOf = (template: Template, scope: Scope): Redundant[] =>
   template.beam.redundants
     .filter((redundant) => isOn(redundant, scope))
     .map((redundant) =>

@@ -24,7 +24,7 @@ import {
   type Tree,
 } from './tree';
 
-export type ParseCode =
+type ParseCode =
   | 'empty'
   | 'too_long'
   | 'too_deep'
@@ -32,10 +32,10 @@ export type ParseCode =
   | 'syntax'
   | 'not_allowed'
   | 'not_finite';
-export type ParseFault = { ok: false; code: ParseCode; message: string; at: number };
+type ParseFault = { ok: false; code: ParseCode; message: string; at: number };
 export type Parsing = { ok: true; tree: Tree } | ParseFault;
 
-export const LONGEST = 300;
+const LONGEST = 300;
 
 /** The maths library's names of the operators that are allowed, and ours. */
 const OPERATORS: Readonly<Record<string, Operation>> = {

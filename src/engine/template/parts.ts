@@ -17,12 +17,12 @@ export const kebab = z
   .max(80)
   .regex(/^[a-z][a-z0-9]*(-[a-z0-9]+)*$/, 'Use small letters, digits and hyphens.');
 /** G permanent, Q imposed, S snow, W wind, and others that a practice names. */
-export const group = z
+const group = z
   .string()
   .regex(/^[A-Z][A-Za-z0-9]{0,7}$/, 'A load group is a capital, then letters and digits.');
 /** What a person would type: "7.2 m". Read by its dimension when the template is checked. */
 export const quantityText = z.string().min(1).max(40);
-export const supportLetter = z.string().regex(/^[A-Z]$/, 'Supports are lettered A, B, C … from the left.');
+const supportLetter = z.string().regex(/^[A-Z]$/, 'Supports are lettered A, B, C … from the left.');
 
 const described = { symbol, tex, name: words(60), help: words(400) };
 

@@ -8,7 +8,7 @@ import { select, selectorDimension } from './select';
 import { readParameters } from './values';
 
 /** One compared quantity, SI; `ok` where |got − expected| ≤ tolerance. */
-export type ProofCheck = {
+type ProofCheck = {
   name: string;
   quantity: Selector;
   expected: number;

@@ -91,7 +91,7 @@ function fill(template: Template, rule: Rule, scope: Scope, system: UnitSystemNa
 export const PLACEHOLDER = /\{([A-Za-z0-9]+)\}/g;
 
 /** How the figure of a symbol is shown. */
-export function purposeOf(template: Template, symbol: string): Purpose {
+function purposeOf(template: Template, symbol: string): Purpose {
   const measured = allMeasured(template).find((one) => one.symbol === symbol);
   if (measured) return measured.dimension;
   if (symbol === 'h') return 'section_size';

@@ -11,14 +11,14 @@ import { isRows, type Row, totalOf, type Value, type Values } from './values';
  * Symbols that mean the same in every template: the bending stiffness; and in rules the section's depth, whether the
  * section's shear deformation is in the result, the largest movement either way, and the reactions by letter.
  */
-export const RESERVED = ['EI', 'h', 'shear', 'dmax'] as const;
+const RESERVED = ['EI', 'h', 'shear', 'dmax'] as const;
 export const isReserved = (symbol: string): boolean =>
   RESERVED.some((reserved) => reserved === symbol) || /^R[A-Z]$/.test(symbol);
 
-export const SHEAR = ['included', 'left-out'] as const;
+const SHEAR = ['included', 'left-out'] as const;
 
 /** A parameter's own kind. */
-export function kindOfParameter(parameter: Parameter | Column): Kind {
+function kindOfParameter(parameter: Parameter | Column): Kind {
   switch (parameter.kind) {
     case 'quantity':
       return ofDimension(DIMENSIONS[parameter.dimension]);

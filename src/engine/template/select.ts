@@ -24,7 +24,7 @@ export function selectorDimension(selector: Selector): DimensionName {
 }
 
 /** A selector in words: "reaction at B", "moment at L + a", "largest deflection down". */
-export function selectorName(selector: Selector): string {
+function selectorName(selector: Selector): string {
   if ('reaction' in selector)
     return selector.component === 'moment'
       ? `moment reaction at ${selector.reaction}`

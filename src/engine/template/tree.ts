@@ -40,7 +40,7 @@ export type Tree = number | string | readonly [Operation, ...Tree[]];
 /** Text as the author typed it, and the tree that is evaluated. */
 export type Expression = { text: string; tree: Tree };
 
-export const isOperation = (name: unknown): name is Operation =>
+const isOperation = (name: unknown): name is Operation =>
   typeof name === 'string' && Object.hasOwn(OPERATIONS, name);
 
 /** The depth and size beyond which an expression is refused: far above any formula, far below any trouble. */

@@ -6,7 +6,7 @@ import type { SolveAnswer } from './answer';
 import { type SolveRequest, solveRequest } from './request';
 import { solveProven, toSolveAnswer } from './solve';
 
-export { type SolveAnswer, solveAnswer } from './answer';
+export { solveAnswer } from './answer';
 export { LIMITS, type SolveRequest, solveRequest } from './request';
 
 export type SolveOutcome = { ok: true; answer: SolveAnswer } | { ok: false; errors: Fault[] };

@@ -93,7 +93,7 @@ export const dimensionsOf = ({ shape, dimensions_mm }: SectionItem): SectionDime
   });
 
 /** What a beam needs to know of an item to be made of it. */
-const toSectionValues = (item: SectionItem): SectionValues => ({
+export const toSectionValues = (item: SectionItem): SectionValues => ({
   designation: item.designation,
   dimensions: dimensionsOf(item),
   massKgM: item.mass_kg_m,

@@ -1,6 +1,6 @@
 import { roundStep } from '../geometry/scale';
 
-export type Graduation = { y: number; label: string };
+type Graduation = { y: number; label: string };
 export type Graduations = { ticks: number[]; marks: Graduation[] };
 
 /** y of row i on a rule that runs from top to bottom over all rows. */

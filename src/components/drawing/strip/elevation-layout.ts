@@ -27,7 +27,7 @@ export type Symbols = {
 /** How far a mechanism is drawn moving, px. */
 export const MECHANISM_REACH = 62;
 
-export type DimensionRow = { y: number; from: number; xs: number[]; pairs: [number, number][] };
+type DimensionRow = { y: number; from: number; xs: number[]; pairs: [number, number][] };
 
 export type ElevationLayout = {
   top: number;

@@ -11,7 +11,7 @@ const LINE = 17;
 const GAP = 8;
 
 /** Heights are measured upward from the top of the member. */
-export type CombMark = {
+type CombMark = {
   x1: number;
   x2: number;
   rise: number;
@@ -19,9 +19,9 @@ export type CombMark = {
   tall2: number;
   upward: boolean;
 };
-export type PointMark = { x: number; tall: number; upward: boolean };
-export type CoupleMark = { x: number; clockwise: boolean; leader: number };
-export type CurvatureMark = { x1: number; x2: number; rise: number; sagging: boolean };
+type PointMark = { x: number; tall: number; upward: boolean };
+type CoupleMark = { x: number; clockwise: boolean; leader: number };
+type CurvatureMark = { x1: number; x2: number; rise: number; sagging: boolean };
 export type LoadLayout = {
   combs: CombMark[];
   points: PointMark[];

@@ -9,14 +9,14 @@ import { type DrawnReaction, type ElevationLayout, layElevation, type Symbols } 
 import type { Frame } from './frame';
 
 /** The most and the least over all combinations, engine signs, with the combination that each named peak comes from. */
-export type EnvelopeDiagram = {
+type EnvelopeDiagram = {
   upper: Piecewise;
   lower: Piecewise;
   peaks: readonly { x: number; value: number; of: string }[];
   note?: string | undefined;
 };
 
-export type DeflectionLimit = { value: number; rule: string };
+type DeflectionLimit = { value: number; rule: string };
 
 export type StripInput = {
   beam: Beam;

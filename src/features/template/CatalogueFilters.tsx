@@ -30,7 +30,7 @@ export function CatalogueFilters(props: FiltersProps) {
   return (
     <nav
       aria-label="Filters"
-      className="flex border-b-2 border-ink max-md:overflow-x-auto md:grid md:grid-cols-2 lg:grid-cols-[minmax(0,412fr)_minmax(0,252fr)_148px_176px]"
+      className="flex border-b-2 border-ink max-md:overflow-x-auto md:grid md:grid-cols-2 lg:grid-cols-[minmax(0,386fr)_minmax(0,290fr)_140px_168px]"
     >
       <Group title="Support arrangement">
         <div className="grid grid-cols-3 gap-x-8 gap-y-4 max-md:grid-cols-2">

@@ -1,7 +1,7 @@
 import { RichHtml } from '@/components/drawing/marks/RichHtml';
 import { unitText } from '@/engine/quantity';
 import { Formula } from './Formula';
-import type { WorkedSteps } from './worked';
+import { isWide, type WorkedSteps } from './worked';
 
 /** The worked steps, numbered; the one that finds the redundant is washed. */
 export function Derivation({ steps, formulas }: WorkedSteps) {
@@ -17,7 +17,10 @@ export function Derivation({ steps, formulas }: WorkedSteps) {
           <span className={`col-span-2 text-schedule max-md:col-span-1 ${key ? '' : 'text-ink-2'}`}>
             <RichHtml text={title} />
           </span>
-          <div className="col-start-2 min-w-0 overflow-x-auto overflow-y-hidden py-1 max-md:col-span-2 max-md:col-start-1 [&_.katex]:text-[1.06em]! [&_.katex-display]:m-0! [&_.katex-display]:text-left! [&_.katex-display>.katex]:text-left!">
+          <div
+            {...scroll(steps[index])}
+            className="col-start-2 min-w-0 overflow-x-auto overflow-y-hidden py-1 max-md:col-span-2 max-md:col-start-1 [&_.katex]:text-[1.06em]! [&_.katex-display]:m-0! [&_.katex-display]:text-left! [&_.katex-display>.katex]:text-left!"
+          >
             <Formula html={formulas[index] ?? ''} />
           </div>
           {display !== '' && (
@@ -38,3 +41,7 @@ export function Derivation({ steps, formulas }: WorkedSteps) {
     </ol>
   );
 }
+
+/** What can be moved sideways can have the focus, so that the arrow keys move it. */
+const scroll = (step: WorkedSteps['steps'][number] | undefined) =>
+  step && isWide(step) ? { tabIndex: 0, role: 'group', 'aria-label': `Formula: ${step.title}` } : {};

@@ -89,7 +89,7 @@ function OneField({ parameter, raw, system, faults, onChange, groups = [] }: One
     );
   if (value.kind !== 'quantity') return null;
   return (
-    <div data-symbol={symbol}>
+    <div data-symbol={symbol} className="grid">
       <MeasuredField
         parameter={parameter}
         entry={value.entry}

@@ -23,7 +23,7 @@ export function StiffnessFields(props: StiffnessFieldsProps) {
   const shown = section ? { text: plainNumber(section, ei.unit), unit: ei.unit } : ei;
   return (
     <>
-      <div data-symbol="EI">
+      <div data-symbol="EI" className="grid">
         <QuantityField
           symbol="EI"
           label="Stiffness"

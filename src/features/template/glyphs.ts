@@ -28,6 +28,6 @@ export const LOAD_GLYPHS: Record<LoadKind, Glyph> = {
   point: under({ kind: 'point', at: 0.5, p: 1 }),
   triangular: under({ kind: 'line', from: 0, to: 1, w0: 0, w1: 1 }),
   couple: under({ kind: 'couple', at: 0.5, m: -1 }),
-  settlement: { length: 1, supports: [pin(0), { at: 1, kind: 'roller', rise: -0.01 }] },
+  settlement: { length: 1, supports: [pin(0), { at: 0.5, kind: 'roller', rise: -0.01 }] },
   temperature: under({ kind: 'curvature', from: 0, to: 1, kappa: 1 }),
 };

@@ -5,5 +5,5 @@ export const setTex = (tex: string, isDisplay = true): string =>
   katex.renderToString(tex, { displayMode: isDisplay, throwOnError: false, output: 'htmlAndMathml' });
 
 /** The same as MathML alone, which a browser sets without further fonts and styles: for pages before their script runs. */
-const setMath = (tex: string): string =>
+export const setMath = (tex: string): string =>
   katex.renderToString(tex, { displayMode: true, throwOnError: false, output: 'mathml' });

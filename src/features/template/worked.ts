@@ -12,11 +12,14 @@ const LINE = 46;
 /** A step's formula: what it says in letters, then in numbers, on a line of their own where they are long. */
 export function stepTex({ symbols, numbers }: DerivationStep): string {
   if (numbers === '') return symbols;
-  const isLong = signsIn(symbols) + signsIn(numbers) > LINE;
-  return isLong
+  return signsIn(symbols) + signsIn(numbers) > LINE
     ? `\\begin{aligned}&${symbols}\\\\[2pt]&\\quad=${numbers}\\end{aligned}`
     : `${symbols} = ${numbers}`;
 }
+
+/** Whether a formula may be wider than its place even on two lines, and must be moved sideways to be read. */
+export const isWide = ({ symbols, numbers }: DerivationStep): boolean =>
+  Math.max(signsIn(symbols), signsIn(numbers)) > LINE / 2;
 
 /** About as many signs as the formula is wide: a fraction is as wide as the longer of its halves. */
 const signsIn = (tex: string): number =>

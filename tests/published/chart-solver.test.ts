@@ -118,7 +118,7 @@ describe.each(CASES)(
       ['couple', (at) => ({ kind: 'couple', at: formula(at), m: formula('M') })],
     ];
 
-    test.each(loads)('under a %s anywhere', (_, load) => {
+    test.each(loads)('under a %s anywhere', { timeout: 60_000 }, (_, load) => {
       for (const at of PLACES) {
         const wanted = solved(supports(), [numeric(load(at))], places);
         for (const [k, { at: place }] of places.entries()) {
@@ -132,10 +132,12 @@ describe.each(CASES)(
       }
     });
 
-    test('under a uniform load, a curvature, or a covered trapezoid over any stretch', () => {
+    test('under a uniform load, a curvature, or a covered trapezoid over any stretch', {
+      timeout: 60_000,
+    }, () => {
       const roll = dice(7);
       let covered = 0;
-      for (let k = 0; k < 120; k++) {
+      for (let k = 0; k < 80; k++) {
         const [a, b] = [roll.pick(PLACES), roll.pick(PLACES)].sort((x, y) => value(x) - value(y)) as [
           string,
           string,
@@ -163,7 +165,7 @@ describe.each(CASES)(
           }
         }
       }
-      expect(covered).toBeGreaterThan(900);
+      expect(covered).toBeGreaterThan(600);
     });
 
     test('when its supports move', () => {

@@ -8,8 +8,9 @@ import { common, ONE, product, type Rational, raised, rational, sum } from './ra
 export type Powers = ReadonlyMap<string, number>;
 export type Monomial = { readonly coefficient: Rational; readonly powers: Powers };
 /** A sum raised to a whole power: at least two monomials without a common factor, the first one positive. */
-export type Factor = { readonly sum: readonly Monomial[]; readonly power: number };
-export type Term = Monomial & { readonly factors: readonly Factor[] };
+export type Factor = { readonly sum: readonly Monomial[]; readonly power: number; readonly key: string };
+/** Two terms that differ by their coefficient alone have the same key. */
+export type Term = Monomial & { readonly factors: readonly Factor[]; readonly key: string };
 /** The sum of its terms; none is zero, no two are alike. */
 export type Expression = readonly Term[];
 
@@ -17,20 +18,19 @@ export const ZERO: Expression = [];
 
 export const constant = (value: Rational | number): Expression => {
   const coefficient = typeof value === 'number' ? rational(value) : value;
-  return coefficient.n === 0 ? ZERO : [{ coefficient, powers: new Map(), factors: [] }];
+  return coefficient.n === 0 ? ZERO : [termOf(coefficient, new Map(), [])];
 };
 
-export const symbol = (name: string): Expression => [
-  { coefficient: ONE, powers: new Map([[name, 1]]), factors: [] },
-];
+export const symbol = (name: string): Expression => [termOf(ONE, new Map([[name, 1]]), [])];
 
 /** The sum, like terms collected, in the order in which they first appear. */
 export function add(...summands: readonly Expression[]): Expression {
+  const terms = summands.flat();
+  if (terms.length < 2) return terms;
   const found = new Map<string, Term>();
-  for (const term of summands.flat()) {
-    const key = keyOf(term);
-    const alike = found.get(key);
-    found.set(key, alike ? { ...alike, coefficient: sum(alike.coefficient, term.coefficient) } : term);
+  for (const term of terms) {
+    const alike = found.get(term.key);
+    found.set(term.key, alike ? { ...alike, coefficient: sum(alike.coefficient, term.coefficient) } : term);
   }
   return [...found.values()].filter(({ coefficient }) => coefficient.n !== 0);
 }
@@ -58,13 +58,9 @@ export function power(a: Expression, k: number): Expression {
   if (k === 0) return constant(1);
   const term = asTerm(a);
   if (term) {
-    return [
-      {
-        coefficient: raised(term.coefficient, k),
-        powers: new Map([...term.powers].map(([name, p]) => [name, p * k])),
-        factors: term.factors.map((factor) => ({ ...factor, power: factor.power * k })),
-      },
-    ];
+    const powers = new Map([...term.powers].map(([name, p]) => [name, p * k] as const));
+    const factors = term.factors.map((factor) => ({ ...factor, power: factor.power * k }));
+    return [termOf(raised(term.coefficient, k), powers, factors)];
   }
   if (k < 0) throw new RangeError(a.length === 0 ? 'division by zero' : 'division by a sum of fractions');
   return multiply(a, power(a, k - 1));
@@ -87,12 +83,13 @@ export function substitute(a: Expression, replacements: Readonly<Record<string, 
 /** Multiplied out into monomials. Fails with RangeError where a sum stands in a denominator. */
 export function expand(a: Expression): Expression {
   return add(
-    ...a.map(({ factors, ...monomial }) => {
-      let total: Expression = [{ ...monomial, factors: [] }];
-      for (const { sum: monomials, power: p } of factors) {
+    ...a.map((term) => {
+      if (term.factors.length === 0) return [term];
+      let total: Expression = [termOf(term.coefficient, term.powers, [])];
+      for (const { sum: monomials, power: p } of term.factors) {
         if (p < 0) throw new RangeError('a sum in a denominator cannot be multiplied out');
         for (let k = 0; k < p; k++) {
-          total = add(...total.map((x) => monomials.map((y) => multiplyTerms(x, { ...y, factors: [] }))));
+          total = add(...total.map((x) => monomials.map((y) => multiplyTerms(x, plain(y)))));
         }
       }
       return total;
@@ -117,16 +114,15 @@ export function evaluate(a: Expression, value: (name: string) => number): number
 export function oriented(a: Expression, value: (name: string) => number): Expression {
   return a.map((term) => {
     let coefficient = term.coefficient;
-    const factors = term.factors.map(({ sum: monomials, power: p }) => {
-      const plain = monomials.map((monomial) => ({ ...monomial, factors: [] }));
-      const isNegative = evaluate(plain, value) < 0;
-      if (isNegative && p % 2 !== 0) coefficient = product(coefficient, rational(-1));
-      const turned = isNegative ? negate(plain) : plain;
+    const factors = term.factors.map((factor) => {
+      const sign = evaluate(factor.sum.map(plain), value) < 0 ? -1 : 1;
+      if (sign < 0 && factor.power % 2 !== 0) coefficient = product(coefficient, rational(-1));
+      const turned = factor.sum.map((m) => ({ ...m, coefficient: product(m.coefficient, rational(sign)) }));
       const positive = turned.filter((monomial) => monomial.coefficient.n > 0);
       const rest = turned.filter((monomial) => monomial.coefficient.n < 0);
-      return { sum: [...positive, ...rest].map(({ factors: _, ...monomial }) => monomial), power: p };
+      return factorOf([...positive, ...rest], factor.power);
     });
-    return { ...term, coefficient, factors };
+    return termOf(coefficient, term.powers, factors);
   });
 }
 
@@ -150,10 +146,10 @@ function asTerm(a: Expression): Term | null {
   );
   const lead = a.findIndex(({ coefficient }) => coefficient.n > 0);
   const content = lead < 0 ? rational(-shared.n, shared.d) : shared;
-  const inverse = { coefficient: raised(content, -1), powers: negated(lowest), factors: [] };
+  const inverse = termOf(raised(content, -1), negated(lowest), []);
   const rest = a.map((term) => multiplyTerms(term, inverse));
   const ordered = lead > 0 ? [rest[lead]!, ...rest.filter((_, k) => k !== lead)] : rest;
-  return { coefficient: content, powers: nonZero(lowest), factors: [{ sum: ordered, power: 1 }] };
+  return termOf(content, nonZero(lowest), [factorOf(ordered, 1)]);
 }
 
 function multiplyTerms(a: Term, b: Term): Term {
@@ -161,32 +157,34 @@ function multiplyTerms(a: Term, b: Term): Term {
   for (const [name, p] of b.powers) powers.set(name, (powers.get(name) ?? 0) + p);
   const factors = [...a.factors];
   for (const factor of b.factors) {
-    const at = factors.findIndex((other) => sumKey(other.sum) === sumKey(factor.sum));
+    const at = factors.findIndex((other) => other.key === factor.key);
     if (at < 0) factors.push(factor);
-    else factors[at] = { sum: factor.sum, power: factors[at]!.power + factor.power };
+    else factors[at] = { ...factor, power: factors[at]!.power + factor.power };
   }
-  return {
-    coefficient: product(a.coefficient, b.coefficient),
-    powers: nonZero(powers),
-    factors: factors.filter((factor) => factor.power !== 0),
-  };
+  const left = factors.filter((factor) => factor.power !== 0);
+  return termOf(product(a.coefficient, b.coefficient), nonZero(powers), left);
+}
+
+const plain = ({ coefficient, powers }: Monomial): Term => termOf(coefficient, powers, []);
+
+function termOf(coefficient: Rational, powers: Powers, factors: readonly Factor[]): Term {
+  const factorsKey = factors.map(({ key, power: p }) => `(${key})^${p}`).sort();
+  return { coefficient, powers, factors, key: [powersKey(powers), ...factorsKey].join('*') };
+}
+
+function factorOf(monomials: readonly Monomial[], p: number): Factor {
+  const parts = monomials.map(({ coefficient: c, powers }) => `${c.n}/${c.d}*${powersKey(powers)}`);
+  return { sum: monomials, power: p, key: parts.sort().join('+') };
 }
 
 const nonZero = (powers: Powers): Powers => new Map([...powers].filter(([, p]) => p !== 0));
 
 const negated = (powers: Powers): Powers => new Map([...powers].map(([name, p]) => [name, -p]));
 
-const powersKey = (powers: Powers) =>
-  [...powers]
-    .map(([name, p]) => `${name}^${p}`)
-    .sort()
-    .join('*');
-
-const sumKey = (monomials: readonly Monomial[]) =>
-  monomials
-    .map(({ coefficient, powers }) => `${coefficient.n}/${coefficient.d}*${powersKey(powers)}`)
-    .sort()
-    .join('+');
-
-const keyOf = (term: Term) =>
-  [powersKey(term.powers), ...term.factors.map((f) => `(${sumKey(f.sum)})^${f.power}`).sort()].join('*');
+const powersKey = (powers: Powers): string =>
+  powers.size === 0
+    ? ''
+    : [...powers]
+        .map(([name, p]) => `${name}^${p}`)
+        .sort()
+        .join('*');

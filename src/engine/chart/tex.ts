@@ -1,7 +1,7 @@
 import type { Expression, Factor, Monomial, Powers, Term } from './expression';
 
 /** How a symbol is written: as its letter, or as its value. A negative value gives its sign to the term it stands in. */
-export type Atom = { tex: string; negative?: boolean };
+type Atom = { tex: string; negative?: boolean };
 export type Writer = {
   atom: (name: string) => Atom;
   /** Numbers need a sign between them; letters stand side by side. */
@@ -11,7 +11,7 @@ export type Writer = {
 };
 
 /** Subscripts from the name: "w_12" and "w12" are w with 12 below it; "kappa" and "delta" are the Greek letters. */
-export function symbolTex(name: string): string {
+function symbolTex(name: string): string {
   const [, letters = name, index = ''] =
     /^([A-Za-z]+?)_?([0-9][A-Za-z0-9]*|(?<=_)[A-Za-z0-9]+)?$/.exec(name) ?? [];
   const greek = /^(alpha|beta|gamma|delta|theta|kappa|lambda|phi|psi|Delta|Phi)$/.test(letters);
@@ -23,7 +23,7 @@ export function symbolTex(name: string): string {
   return index === '' ? head : `${head}_{${index}}`;
 }
 
-export const SYMBOLS: Writer = { atom: (name) => ({ tex: symbolTex(name) }), times: '' };
+const SYMBOLS: Writer = { atom: (name) => ({ tex: symbolTex(name) }), times: '' };
 
 /** The expression in TeX. Fractions are \dfrac; powers and brackets as a person would write them. */
 export function texOf(expression: Expression, writer: Writer = SYMBOLS): string {
@@ -37,7 +37,7 @@ function joinSigned(parts: readonly Signed[]): string {
   return parts.map(({ negative, tex }, k) => (negative ? `-${tex}` : k > 0 ? `+${tex}` : tex)).join('');
 }
 
-function termTex(term: Term, writer: Writer): Signed {
+function termTex(term: Omit<Term, 'key'>, writer: Writer): Signed {
   const top = side(term, term.coefficient.n, 1, writer);
   const bottom = side(term, term.coefficient.d, -1, writer);
   const negative = top.negative !== bottom.negative;
@@ -45,7 +45,7 @@ function termTex(term: Term, writer: Writer): Signed {
 }
 
 /** Numerator (sign 1) or denominator (sign −1) of a term. */
-function side({ powers, factors }: Term, whole: number, sign: 1 | -1, writer: Writer): Signed {
+function side({ powers, factors }: Omit<Term, 'key'>, whole: number, sign: 1 | -1, writer: Writer): Signed {
   const here = factors.filter((factor) => Math.sign(factor.power) === sign);
   const letters = product(positive(powers, sign), whole, writer);
   const alone = letters.tex === '1' && here.length === 1;

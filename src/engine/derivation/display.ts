@@ -1,5 +1,5 @@
-import { formatNumber, toUnit } from '../quantity/index';
-import { numberTex, toTex } from './symbols';
+import { formatNumber } from '../quantity/index';
+import { inUnit, numberTex, toTex } from './symbols';
 
 /** Figures of a result, and of the numbers it is shown to come from unless they need more. */
 export const FIGURES = 4;
@@ -11,13 +11,13 @@ const REMAINDER = 1e-3;
  * to the decimals that four figures of the largest of them have.
  */
 export function display(si: number, unit: string, largest = Math.abs(si)): string {
-  return shown(toUnit(si, unit), Math.abs(toUnit(largest, unit)), FIGURES);
+  return shown(inUnit(si, unit), Math.abs(inUnit(largest, unit)), FIGURES);
 }
 
 /** The same for maths mode, with the unit; to as many figures as `like`, a display of it in another unit, has. */
 export function withUnit(si: number, unit: string, largest = Math.abs(si), like = ''): string {
   const figures = Math.max(FIGURES, like.replace(/[.,].*/, '').replaceAll(/\D/g, '').length);
-  const text = shown(toUnit(si, unit), Math.abs(toUnit(largest, unit)), figures);
+  const text = shown(inUnit(si, unit), Math.abs(inUnit(largest, unit)), figures);
   return `${toTex(text)}\\,\\mathrm{${unitTex(unit)}}`;
 }
 
@@ -29,6 +29,6 @@ function shown(value: number, reference: number, figures: number): string {
 
 /** A value as it was given, with its unit, for maths mode. */
 export const given = (si: number, unit: string): string =>
-  `${numberTex(toUnit(si, unit))}\\,\\mathrm{${unitTex(unit)}}`;
+  `${numberTex(inUnit(si, unit))}\\,\\mathrm{${unitTex(unit)}}`;
 
 const unitTex = (unit: string): string => unit.replace(/2$/, '^2');

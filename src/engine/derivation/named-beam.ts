@@ -4,6 +4,7 @@ import {
   defaultRedundants,
   type LineLoad,
   type Load,
+  letteredSupports,
   type Redundant,
   type Restraint,
   type Support,
@@ -47,18 +48,15 @@ export function nameBeam({ beam, names, redundants }: DeriveInput): NamedBeam {
   const letters = new Letters();
   const places = new Places(letters, beam.length, names?.lengths ?? []);
   const stiffness = nameStiffness(beam, letters);
-  const order = beam.supports
-    .map((support, index) => ({ support, index }))
-    .sort((a, b) => a.support.at - b.support.at);
   let before = 0;
   const spanTo = (x: number) => {
     const at = places.span(x, before);
     before = x;
     return at;
   };
-  const supports = order.map(
-    ({ support, index }, k): NamedSupport => ({
-      letter: letterOf(k),
+  const supports = letteredSupports(beam).map(
+    ({ support, index, letter }): NamedSupport => ({
+      letter,
       index,
       x: support.at,
       at: spanTo(support.at),
@@ -79,12 +77,6 @@ export function nameBeam({ beam, names, redundants }: DeriveInput): NamedBeam {
     setting: (ei) => ({ value: letters.value, ei, length: beam.length }),
   };
 }
-
-/** A … Z, then AA, AB … */
-export const letterOf = (k: number): string => {
-  const last = String.fromCharCode('A'.charCodeAt(0) + (k % 26));
-  return k < 26 ? last : letterOf(Math.floor(k / 26) - 1) + last;
-};
 
 function nameStiffness({ segments }: Beam, letters: Letters): Expression[] {
   const different = new Set(segments.map(({ ei }) => ei)).size > 1;

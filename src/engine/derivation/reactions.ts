@@ -12,7 +12,7 @@ export function reactionSteps(worked: Worked): DerivationStep[] {
   const { beam, unknowns } = worked;
   const internal = unknowns.some(({ kind }) => kind === 'internal');
   const whole = beam.hinges.length === 0 && !internal;
-  return equilibrium(beam, unknowns).map((equation) => {
+  return equilibrium(beam, worked.parts, unknowns).map((equation) => {
     const kind = equation.support && equation.tex === fixingTex(equation.support) ? 'moment' : 'force';
     const step = calculate(beam.letters, {
       id: `equilibrium-${equation.tex.replaceAll(/[^A-Za-z0-9]/g, '')}`,
@@ -63,7 +63,7 @@ function nameLength(beam: NamedBeam, { from, to }: { from: number; to: number })
 
 /** The moments over the supports that are no unknowns of the derivation already; defines nothing. */
 export function supportMomentSteps(worked: Worked): DerivationStep[] {
-  const { beam, unknowns, solution } = worked;
+  const { beam, unknowns, parts, solution } = worked;
   const largest = Math.max(
     Math.abs(solution.extremes.moment.max.value),
     Math.abs(solution.extremes.moment.min.value),
@@ -82,13 +82,11 @@ export function supportMomentSteps(worked: Worked): DerivationStep[] {
           `${letter}-${side}`,
           `Moment just ${side} of ${letter}`,
           `M_{${letter},\\mathrm{${side}}}`,
-          momentAt(beam, unknowns, support, side),
+          momentAt(beam, parts, support, side),
         ),
       );
     }
-    return [
-      moment(beam, letter, `Moment over ${letter}`, `M_{${letter}}`, momentAt(beam, unknowns, support)),
-    ];
+    return [moment(beam, letter, `Moment over ${letter}`, `M_{${letter}}`, momentAt(beam, parts, support))];
   });
 }
 
@@ -128,7 +126,7 @@ export function peakStep(worked: Worked): DerivationStep[] {
       id: 'largest-moment',
       title: `Largest sagging moment, ${Number(x.toFixed(3))} m from the left end`,
       left: `M(${where})`,
-      expression: momentAt(beam, worked.unknowns, { x, at: place }),
+      expression: momentAt(beam, worked.parts, { x, at: place }),
       value,
       kind: 'moment',
       scale: 'metre',

@@ -20,7 +20,7 @@ import { fixingSense, fixingTex, reactionTex, type Unknown } from './unknown';
 type Action = { tex: string; at: Expression; x: number; kind: 'force' | 'couple'; amount: 1 | -1 };
 
 /** A part between two sections whose moments are known: hinges, and the redundants within the beam. */
-type Part = {
+export type Part = {
   from: number;
   to: number;
   actions: Action[];
@@ -45,8 +45,11 @@ export const shearTex = (name: string): string => `V_{${name}}`;
  * Every reaction that is not a redundant, each from one equation with one unknown, in an order that can be followed by
  * hand: parts with one or two unknowns first. The shear just right of a section is an unknown on the way.
  */
-export function equilibrium(beam: NamedBeam, unknowns: readonly Unknown[]): Equilibrium[] {
-  const parts = partsOf(beam, unknowns);
+export function equilibrium(
+  beam: NamedBeam,
+  parts: readonly Part[],
+  unknowns: readonly Unknown[],
+): Equilibrium[] {
   const known = new Set(unknowns.map(({ tex }) => tex));
   const found: Equilibrium[] = [];
   const missing = (part: Part) => part.actions.filter(({ tex }) => !known.has(tex));
@@ -87,7 +90,8 @@ function solvePair(
   }
 }
 
-function partsOf(beam: NamedBeam, unknowns: readonly Unknown[]): Part[] {
+/** The parts of the beam between sections whose moment is known, with all that acts on them. */
+export function partsOf(beam: NamedBeam, unknowns: readonly Unknown[]): Part[] {
   const internal = unknowns.filter(({ kind }) => kind === 'internal');
   const hinges = beam.hinges.map(({ x }, k) => ({ x, name: hingeName(beam, x, k), moment: ZERO }));
   const cuts = internal.map(({ x, letter, tex }) => ({ x, name: letter, moment: symbol(tex) }));
@@ -187,11 +191,11 @@ export function loadMoment(load: NamedLoad, about: Expression): Expression {
  */
 export function momentAt(
   beam: NamedBeam,
-  unknowns: readonly Unknown[],
+  parts: readonly Part[],
   { x, at }: { x: number; at: Expression },
   side?: 'left' | 'right',
 ): Expression {
-  const part = partsOf(beam, unknowns).find(({ from, to }) => from <= x && x <= to)!;
+  const part = parts.find(({ from, to }) => from <= x && x <= to)!;
   if (side) return momentFrom(beam, part, x, at, side);
   const [left, right] = (['left', 'right'] as const).map((from) => momentFrom(beam, part, x, at, from));
   return left!.length <= right!.length ? left! : right!;

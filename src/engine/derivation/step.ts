@@ -1,7 +1,6 @@
 import { type ChartTerm, type Expression, evaluate, oriented, texOf } from '../chart/index';
-import { fromUnit, toUnit } from '../quantity/index';
 import { display, FIGURES, withUnit } from './display';
-import { type Kind, type Letters, numberTex, type Scale, unitOf } from './symbols';
+import { inUnit, type Kind, type Letters, numberTex, type Scale, toSi, unitOf } from './symbols';
 import type { ChartUse, DerivationStep, DisplayUnit } from './types';
 
 const MOST_FIGURES = 10;
@@ -39,7 +38,7 @@ export function calculate(letters: Letters, calculation: Calculation): Derivatio
     value: calculation.value ?? letters.of(expression),
     largest: Math.max(0, ...sizes),
     total: (figures) =>
-      fromUnit(
+      toSi(
         evaluate(expression, (tex) => letters.shown(tex, scale, figures)),
         unitOf(kind, scale),
       ),
@@ -51,13 +50,13 @@ export function sumUp(summation: Summation): DerivationStep {
   const { symbols, parts, value, kind, scale } = summation;
   const unit = unitOf(kind, scale);
   const terms = (figures: number) =>
-    parts.map((part) => Number(toUnit(part, unit).toPrecision(figures))).filter((part) => part !== 0);
+    parts.map((part) => Number(inUnit(part, unit).toPrecision(figures))).filter((part) => part !== 0);
   return finish(summation, {
     symbols,
     value,
     largest: Math.max(0, ...parts.map(Math.abs)),
     total: (figures) =>
-      fromUnit(
+      toSi(
         terms(figures).reduce((sum, part) => sum + part, 0),
         unit,
       ),

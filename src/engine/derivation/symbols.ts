@@ -1,5 +1,5 @@
 import { type Expression, evaluate, symbol, type Writer } from '../chart/index';
-import { formatNumber, toUnit } from '../quantity/index';
+import { formatNumber, fromUnit } from '../quantity/index';
 
 /** Kinds of symbol, with the unit each is written in where movements are in m and rad, and where in mm and mrad. */
 const UNITS = {
@@ -26,10 +26,24 @@ const UNITS = {
 } as const;
 
 export type Kind = keyof typeof UNITS;
+const KINDS = Object.keys(UNITS);
 /** Movements in m and rad, as the closed forms give them; or in mm and mrad, as results are handed on. */
 export type Scale = 'metre' | 'milli';
 
 export const unitOf = (kind: Kind, scale: Scale): string => UNITS[kind][scale === 'metre' ? 0 : 1];
+
+/** SI value of 1 of each unit: read once, not at every number. */
+const FACTORS: ReadonlyMap<string, number> = new Map(
+  Object.values(UNITS)
+    .flat()
+    .map((unit) => [unit, fromUnit(1, unit)]),
+);
+
+/** An SI value in one of the derivation's units. */
+export const inUnit = (si: number, unit: string): number => si / (FACTORS.get(unit) ?? Number.NaN);
+
+/** SI of a value in one of the derivation's units. */
+export const toSi = (value: number, unit: string): number => value * (FACTORS.get(unit) ?? Number.NaN);
 
 /** A letter of the derivation: its TeX is its name. `given`: to be explained; not a result, and not on the drawing. */
 export type Letter = { tex: string; value: number; kind: Kind; given: boolean };
@@ -78,7 +92,7 @@ export class Letters {
     return [...this.found.values()].filter(({ given }) => given);
   }
 
-  readonly rank = (tex: string): number => Object.keys(UNITS).indexOf(this.letter(tex).kind);
+  readonly rank = (tex: string): number => KINDS.indexOf(this.letter(tex).kind);
 
   symbols(): Writer {
     return { atom: (tex) => ({ tex }), times: '', rank: this.rank };
@@ -96,7 +110,7 @@ export class Letters {
   /** The value that `numbers` writes. */
   shown(tex: string, scale: Scale, figures: number): number {
     const { value, kind } = this.letter(tex);
-    return Number(toUnit(value, unitOf(kind, scale)).toPrecision(figures));
+    return Number(inUnit(value, unitOf(kind, scale)).toPrecision(figures));
   }
 }
 

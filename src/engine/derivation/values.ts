@@ -1,6 +1,7 @@
 import { type Solution, solveBeam } from '../beam/index';
 import type { Redundant } from '../model/index';
 import type { NamedBeam } from './named-beam';
+import { type Part, partsOf } from './statics';
 import { type Unknown, unknownsOf } from './unknown';
 
 /** The force method's results in the derivation's letters and senses. */
@@ -8,6 +9,8 @@ export type Worked = {
   beam: NamedBeam;
   solution: Solution;
   unknowns: Unknown[];
+  /** The beam cut where its moment is known. */
+  parts: Part[];
   /** Against the sense of a reaction, in the sense of an internal moment. m or rad. */
   gaps: number[];
   /** Both in their sense. */
@@ -26,6 +29,7 @@ export function work(beam: NamedBeam, redundants?: readonly Redundant[]): Worked
     beam,
     solution,
     unknowns,
+    parts: partsOf(beam, unknowns),
     gaps: forceMethod.gaps.map((gap, i) => gap * against[i]!),
     flexibility: forceMethod.flexibility.map((row, i) =>
       row.map((f, j) => (isNothing(forceMethod, i, j) ? 0 : f * unknowns[i]!.sense * unknowns[j]!.sense)),

@@ -13,7 +13,7 @@ export type ReleasedState = { reactions: ReadonlyMap<string, number>; shear: Pie
 /** The released beam under the loads (null) or a unit value of a redundant; each state is made once. */
 export function releasedStates(worked: Worked): (unit: Unknown | null) => ReleasedState {
   const made = new Map<Unknown | null, ReleasedState>();
-  const equations = equilibrium(worked.beam, worked.unknowns);
+  const equations = equilibrium(worked.beam, worked.parts, worked.unknowns);
   return (unit) => {
     const state = made.get(unit) ?? releasedState(worked, equations, unit);
     made.set(unit, state);

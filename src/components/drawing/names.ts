@@ -1,26 +1,14 @@
-import type { Beam, Support } from '@/engine/model/index';
-
-/** A support that holds something, with its letter: A, B, C from the left. */
-export type NamedSupport = { support: Support; index: number; letter: string };
+import { type Beam, type LetteredSupport, letteredSupports, type Support } from '@/engine/model/index';
 
 export const holds = ({ vertical, rotation }: Support): boolean =>
   vertical.kind !== 'free' || rotation.kind !== 'free';
 
-const letterOf = (place: number): string => {
-  const letter = String.fromCharCode(65 + (place % 26));
-  return place < 26 ? letter : `${letterOf(Math.floor(place / 26) - 1)}${letter}`;
-};
-
-export function namedSupports(beam: Beam): NamedSupport[] {
-  return beam.supports
-    .map((support, index) => ({ support, index }))
-    .filter(({ support }) => holds(support))
-    .sort((a, b) => a.support.at - b.support.at)
-    .map((each, place) => ({ ...each, letter: letterOf(place) }));
-}
+/** The supports that hold something, from the left: a free end is not drawn. */
+export const namedSupports = (beam: Beam): LetteredSupport[] =>
+  letteredSupports(beam).filter(({ support }) => holds(support));
 
 /** The letter of the support at x, if there is one. */
-export function letterAt(names: readonly NamedSupport[], x: number, length: number): string | undefined {
+export function letterAt(names: readonly LetteredSupport[], x: number, length: number): string | undefined {
   return names.find(({ support }) => Math.abs(support.at - x) < length * 1e-6)?.letter;
 }
 

@@ -8,7 +8,7 @@ export {
   LOAD_GROUPS,
 } from './criteria';
 export { checkMember } from './member';
-export { letteredSupports, regionsOf, supportLetter } from './regions';
+export { regionsOf } from './regions';
 export type {
   Arrangement,
   CheckKind,

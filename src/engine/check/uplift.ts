@@ -1,5 +1,4 @@
-import type { Beam } from '../model/index';
-import { letteredSupports } from './regions';
+import { type Beam, letteredSupports } from '../model/index';
 import type { Arrangement, Finding } from './types';
 
 /** Below this share of the largest reaction a pull is rounding. */
@@ -14,7 +13,7 @@ export function upliftFindings(
   arrangements: readonly Arrangement[],
   force: (newtons: number) => string,
 ): Finding[] {
-  const letters = new Map(letteredSupports(beam).map(({ at, letter }) => [at, letter]));
+  const letters = new Map(letteredSupports(beam).map(({ index, letter }) => [index, letter]));
   return beam.supports.flatMap((support, index) => {
     let least = 0;
     let combination = '';
@@ -28,7 +27,7 @@ export function upliftFindings(
       }
     }
     if (least === 0) return [];
-    const letter = letters.get(support.at) ?? '';
+    const letter = letters.get(index) ?? '';
     return [
       {
         id: `uplift-${letter}`,

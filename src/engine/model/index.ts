@@ -1,3 +1,4 @@
+export { type LetteredSupport, letteredSupports, supportLetter } from './letters';
 export { releaseMechanism } from './motion';
 export { readBeam } from './read';
 export { COINCIDENT } from './reader';

@@ -1,17 +1,7 @@
-import { supportLetter } from '../check/index';
-import type { Restraint, Support, SupportKind } from '../model/index';
+import { letteredSupports, type Restraint, type Support, type SupportKind } from '../model/index';
 import type { RuleOutcome } from '../template/index';
 import type { Figures } from './figures';
 import type { SheetBlock, SheetInput, SheetRow } from './types';
-
-/** A support with its letter from the left, and its place in the beam's list. */
-export type LetteredSupport = { readonly support: Support; readonly letter: string; readonly index: number };
-
-export const supportsOf = (beam: SheetInput['result']['beam']): LetteredSupport[] =>
-  beam.supports
-    .map((support, index) => ({ support, index }))
-    .sort((a, b) => a.support.at - b.support.at)
-    .map((one, k) => ({ ...one, letter: supportLetter(k) }));
 
 const HOLDS: Record<SupportKind, string> = {
   fixed: 'Fixed: neither moves nor turns',
@@ -59,7 +49,7 @@ export function basisBlocks(input: SheetInput, figures: Figures): SheetBlock[] {
     rows.length === 0 ? [] : [{ kind: 'table', name, columns: [{ title }, { title: second }], rows }];
   return [
     ...table('Basis', 'Basis', 'Taken as', [
-      ...supportsOf(result.beam).map(({ support, letter }) =>
+      ...letteredSupports(result.beam).map(({ support, letter }) =>
         row(
           `Support ${letter}, ${figures.whole(support.at, 'position')} from the left`,
           supportText(support, figures),

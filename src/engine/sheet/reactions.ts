@@ -1,5 +1,5 @@
 import type { Reaction } from '../beam/index';
-import { type LetteredSupport, supportsOf } from './basis';
+import { type LetteredSupport, letteredSupports } from '../model/index';
 import type { Figures } from './figures';
 import { figureColumn } from './results';
 import type { Cell, SheetBlock, SheetColumn, SheetInput, SheetRow } from './types';
@@ -15,7 +15,7 @@ type Held = {
 /** Reactions by group, unfactored, to hand on; then their range over the strength combinations. */
 export function reactionBlocks({ result }: SheetInput, figures: Figures): SheetBlock[] {
   const { beam, groups, total, strength, checks } = result;
-  const held = supportsOf(beam).flatMap((support) => heldBy(support, figures));
+  const held = letteredSupports(beam).flatMap((support) => heldBy(support, figures));
   const columns: SheetColumn[] = [
     { title: 'Reaction' },
     { title: 'Unit' },

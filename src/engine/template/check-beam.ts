@@ -1,9 +1,10 @@
+import { supportLetter } from '../model/index';
 import { expressionFaults, type TemplateFault } from './check-expression';
 import type { Kinds } from './dimension';
 import type { Template } from './document';
 import { loadSymbols } from './loads';
 import type { Path } from './measured';
-import { columnKinds, kindsOf, letterOf } from './scope';
+import { columnKinds, kindsOf } from './scope';
 
 type Beam = Template['beam'];
 type LoadTemplate = Beam['loads'][number];
@@ -108,7 +109,7 @@ function loadFaults(template: Template, load: LoadTemplate, path: Path): Templat
 }
 
 function redundantFaults(beam: Beam, kinds: Kinds): TemplateFault[] {
-  const letters = beam.supports.map((_, index) => letterOf(index));
+  const letters = beam.supports.map((_, index) => supportLetter(index));
   return beam.redundants.flatMap((redundant, index) => {
     const path = ['beam', 'redundants', index];
     const when = expressionFaults(redundant.when, 'condition', kinds, [...path, 'when']);

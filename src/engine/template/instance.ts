@@ -1,11 +1,18 @@
-import type { BeamDocument, Load, Redundant, SegmentDocument, SupportDocument } from '../model/index';
+import {
+  type BeamDocument,
+  type Load,
+  type Redundant,
+  type SegmentDocument,
+  type SupportDocument,
+  supportLetter,
+} from '../model/index';
 import { readQuantity } from '../quantity/index';
 import type { Template } from './document';
 import { evaluateNumber, evaluateTruth, type Scope } from './evaluate';
 import { loadOf, loadShares, type NamedLoad, nameOf } from './loads';
 import type { ParameterFault } from './measured';
 import { judgeRules, type RuleOutcome } from './rules';
-import { letterOf, scopeOf } from './scope';
+import { scopeOf } from './scope';
 import type { Values } from './values';
 
 export type InstanceOptions = {
@@ -77,7 +84,7 @@ export function instantiate(
       ei,
       scope,
       derived: Object.fromEntries(template.derived.map(({ symbol }) => [symbol, Number(scope.get(symbol))])),
-      letters: beam.supports.map((_, index) => letterOf(index)),
+      letters: beam.supports.map((_, index) => supportLetter(index)),
       dimensions: dimensionsOf(template, scope),
       loadNames: [...shares.map((share) => nameOf(template, share)), ...own.map(() => OWN_WEIGHT)],
       rules,

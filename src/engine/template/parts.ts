@@ -22,7 +22,7 @@ const group = z
   .regex(/^[A-Z][A-Za-z0-9]{0,7}$/, 'A load group is a capital, then letters and digits.');
 /** What a person would type: "7.2 m". Read by its dimension when the template is checked. */
 export const quantityText = z.string().min(1).max(40);
-const supportLetter = z.string().regex(/^[A-Z]$/, 'Supports are lettered A, B, C … from the left.');
+const supportName = z.string().regex(/^[A-Z]$/, 'Supports are lettered A, B, C … from the left.');
 
 const described = { symbol, tex, name: words(60), help: words(400) };
 
@@ -110,7 +110,7 @@ export function beamSchema<E extends z.ZodType>(expression: E) {
     }),
   ]);
   const redundant = z.union([
-    z.strictObject({ support: supportLetter, component: z.enum(['vertical', 'rotation']), ...conditional }),
+    z.strictObject({ support: supportName, component: z.enum(['vertical', 'rotation']), ...conditional }),
     z.strictObject({ at: expression, component: z.literal('moment'), ...conditional }),
   ]);
   return z.strictObject({
@@ -142,7 +142,7 @@ export function selectorSchema<E extends z.ZodType>(expression: E) {
   /** The value, or its place, measured from `from` (the left end unless given). */
   const reading = { read: z.enum(['value', 'position']).optional(), from: expression.optional() };
   return z.union([
-    z.strictObject({ reaction: supportLetter, component: z.enum(['vertical', 'moment']).optional() }),
+    z.strictObject({ reaction: supportName, component: z.enum(['vertical', 'moment']).optional() }),
     z.strictObject({ shear: expression, side }),
     z.strictObject({ moment: expression, side }),
     z.strictObject({ slope: expression, sense: z.enum(['anticlockwise', 'clockwise']) }),

@@ -1,8 +1,9 @@
+import { supportLetter } from '../model/index';
 import { DIMENSIONS, equalDimensions, formatFor, type Purpose, type UnitSystemName } from '../quantity/index';
 import type { Rule, Template } from './document';
 import { evaluateNumber, evaluateTruth, rowsOf, type Scope, within } from './evaluate';
 import type { Severity } from './parts';
-import { allMeasured, kindsOf, letterOf, sourcesOf } from './scope';
+import { allMeasured, kindsOf, sourcesOf } from './scope';
 import { symbolsOf } from './tree';
 
 /** What is known of the section and the result, for the rules that speak of them. */
@@ -50,7 +51,7 @@ function withKnown(scope: Scope, { depth, ga, solution }: Known): Scope {
     const { max, min } = solution.extremes.deflection;
     more.set('dmax', Math.max(max.value, -min.value));
     for (const [index, { vertical }] of solution.reactions.entries())
-      more.set(`R${letterOf(index)}`, vertical);
+      more.set(`R${supportLetter(index)}`, vertical);
   }
   return within(more, scope);
 }

@@ -1,4 +1,5 @@
 /** What an expression of a template may speak of: its kinds, for checking, and its values, for evaluating. */
+import { supportLetter } from '../model/index';
 import { DIMENSIONS } from '../quantity/index';
 import { dimensionOf, type Kind, type Kinds, ofDimension } from './dimension';
 import type { Template } from './document';
@@ -54,12 +55,9 @@ export function ruleKinds(template: Template): Map<string, Kind> {
   kinds.set('shear', { is: 'text', values: SHEAR });
   kinds.set('dmax', ofDimension(DIMENSIONS.length));
   for (const index of template.beam.supports.keys())
-    kinds.set(`R${letterOf(index)}`, ofDimension(DIMENSIONS.force));
+    kinds.set(`R${supportLetter(index)}`, ofDimension(DIMENSIONS.force));
   return kinds;
 }
-
-/** Support letters, from the left: 0 is A. */
-export const letterOf = (index: number): string => String.fromCharCode('A'.charCodeAt(0) + index);
 
 type Cell = number | string | readonly Scope[];
 

@@ -1,7 +1,7 @@
 import { RichHtml } from '@/components/drawing/marks/RichHtml';
 import { ZoneHeading } from '@/components/ui/ZoneHeading';
-import { letteredSupports } from '@/engine/check';
 import type { Load } from '@/engine/model';
+import { letteredSupports } from '@/engine/model';
 import { formatFor, type UnitSystemName } from '@/engine/quantity';
 import { drawnName } from '@/features/template/names';
 import type { MemberEvaluation } from './evaluate';
@@ -126,12 +126,12 @@ export function ReactionsZone({ evaluation, system }: ZoneProps) {
 }
 
 function reactionRows({ beam, groups, total, strength }: MemberEvaluation) {
-  const letters = new Map(letteredSupports(beam).map(({ at, letter }) => [at, letter]));
+  const letters = new Map(letteredSupports(beam).map(({ index, letter }) => [index, letter]));
   return beam.supports.flatMap((support, index) => {
     const row = (component: 'vertical' | 'moment', words: string) => {
       const all = strength.map(({ solution }) => solution.reactions[index]?.[component] ?? 0);
       return {
-        name: `${letters.get(support.at) ?? ''}, ${words}`,
+        name: `${letters.get(index) ?? ''}, ${words}`,
         purpose: component === 'vertical' ? ('reaction' as const) : ('moment' as const),
         groups: groups.map(({ group, solution }) => ({
           group,

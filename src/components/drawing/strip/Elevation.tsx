@@ -1,11 +1,11 @@
 import { memo } from 'react';
-import type { Beam } from '@/engine/model/index';
+import type { Beam, LetteredSupport } from '@/engine/model/index';
 import { type DrawingFormat, figure } from '../format';
 import { Bubble } from '../marks/Bubble';
 import { Dimension } from '../marks/Dimension';
 import { arrowPath } from '../marks/paths';
 import { type Seat, SupportMark } from '../marks/Supports';
-import { type NamedSupport, namedSupports } from '../names';
+import { namedSupports } from '../names';
 import { forceArrow } from '../signs';
 import type { ElevationLayout, ReactionMark } from './elevation-layout';
 import { FigureText } from './FigureText';
@@ -76,7 +76,7 @@ function Movement({
   y,
   format,
 }: {
-  named: NamedSupport;
+  named: LetteredSupport;
   x: number;
   y: number;
   format: DrawingFormat;
@@ -110,7 +110,7 @@ function SupportPlace({
   layout,
   beam,
   format,
-}: { named: NamedSupport } & Pick<Props, 'frame' | 'layout' | 'beam' | 'format'>) {
+}: { named: LetteredSupport } & Pick<Props, 'frame' | 'layout' | 'beam' | 'format'>) {
   const { support, letter } = named;
   const end = endOf(support.at, beam.length);
   const x = xOf(frame, support.at);

@@ -118,6 +118,8 @@ function reasonNotToSave({ live, draft, isDirty, saving }: MemberBlockProps['wor
 
 function said({ saving, isDirty, member }: MemberBlockProps['work']): string {
   if (saving.kind === 'saving') return 'Saving: the server evaluates the member.';
+  if (saving.kind === 'stale' || saving.kind === 'refused')
+    return 'Not saved. What to settle stands at the top of the sheet.';
   if (isDirty) return 'Changed here, not saved yet.';
   return `Saved as version ${member.version}, evaluated by the server.`;
 }

@@ -1,3 +1,4 @@
+import { Button } from '@/components/ui/Button';
 import { Notice } from '@/components/ui/Notice';
 import { SheetHead } from '@/components/ui/SheetHead';
 import { ZoneHeading } from '@/components/ui/ZoneHeading';
@@ -55,7 +56,7 @@ export function MemberSheet({ data }: { readonly data: WorkspaceData }) {
         }}
         onTakeTheirs={work.readAgain}
       />
-      {causes.length > 0 && <CauseNotice causes={causes} />}
+      {causes.length > 0 && <CauseNotice causes={causes} onPutBack={work.putBack} />}
       <div className="flex flex-col max-md:flex-col-reverse">
         <Inputs data={data} work={work} />
         <ElevationZone
@@ -69,7 +70,7 @@ export function MemberSheet({ data }: { readonly data: WorkspaceData }) {
         <Zones data={data} work={work} />
         <aside className="flex min-w-0 flex-col border-ink max-lg:border-t lg:border-l">
           <BasisZone template={data.template} evaluation={live.evaluation} system={system} />
-          <HistoryZone history={data.history} />
+          <HistoryZone history={work.history} />
           <div className="mt-auto">
             <MemberBlock data={data} work={work} />
           </div>
@@ -100,10 +101,19 @@ function Head({ data: { job, template }, work: { member, draft, live } }: PartPr
   );
 }
 
+interface CauseNoticeProps {
+  readonly causes: readonly Cause[];
+  readonly onPutBack: () => void;
+}
+
 /** What stops the drawing, each with the way to its field. */
-function CauseNotice({ causes }: { readonly causes: readonly Cause[] }) {
+function CauseNotice({ causes, onPutBack }: CauseNoticeProps) {
   return (
-    <Notice tone="error" title={stopTitle(causes)}>
+    <Notice
+      tone="error"
+      title={stopTitle(causes)}
+      actions={<Button onClick={onPutBack}>Put back the last good values</Button>}
+    >
       <ul className="list-disc pl-18">
         {causes.map(({ symbol, title, message }) => (
           <li key={title + message}>

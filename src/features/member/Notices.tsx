@@ -1,4 +1,4 @@
-import { useState } from 'react';
+import { useEffect, useRef, useState } from 'react';
 import { Button } from '@/components/ui/Button';
 import { Radio } from '@/components/ui/Choice';
 import { Notice } from '@/components/ui/Notice';
@@ -62,7 +62,23 @@ interface SaveNoticeProps {
 }
 
 /** What came of the last save, where a person has something to settle. */
-export function SaveNotice({ saving, body, onSettle, onTakeTheirs }: SaveNoticeProps) {
+export function SaveNotice(props: SaveNoticeProps) {
+  const host = useRef<HTMLDivElement>(null);
+  const { saving } = props;
+  const isOpen =
+    saving.kind === 'refused' || saving.kind === 'stale' || (saving.kind === 'saved' && !saving.isSame);
+  // Saving is pressed at the foot of the sheet: what came of it is brought to whoever pressed.
+  useEffect(() => {
+    if (isOpen) host.current?.focus();
+  }, [isOpen]);
+  return (
+    <div ref={host} tabIndex={-1}>
+      {isOpen && <OpenNotice {...props} />}
+    </div>
+  );
+}
+
+function OpenNotice({ saving, body, onSettle, onTakeTheirs }: SaveNoticeProps) {
   if (saving.kind === 'refused')
     return (
       <Notice tone="error" title={`Not saved. ${saving.message}`}>

@@ -1,7 +1,7 @@
 import type { CheckKind } from '@/engine/check';
 import { materialFor } from '@/engine/section';
-import { sectionValuesOf } from '@/features/section/item-values';
 import type { SectionItem } from '@/features/section/section';
+import { toSectionValues } from '@/features/section/section';
 import { materialsFor } from '@/features/template/section-pick';
 import { evaluateMember, type MemberInputs } from './evaluate';
 import type { DraftSection } from './workspace';
@@ -38,7 +38,7 @@ export function sectionQuery(
 
 /** The section as the draft takes it: of the material in use where it can be made of it, else of the usual one. */
 export function draftSection(item: SectionItem, material: string | undefined): DraftSection {
-  const values = sectionValuesOf(item);
+  const values = toSectionValues(item);
   const offered = materialsFor(values);
   const chosen = offered.find(({ id }) => id === material) ?? offered[0];
   return { values, table: item.table, material: chosen?.id ?? '' };

@@ -9,8 +9,10 @@ import { putMember } from './member.api';
 import { sameFigures, toStoredResult } from './result';
 import {
   bodyOf,
+  changesOf,
   type Draft,
   differencesOf,
+  type HistoryLine,
   toBody,
   toDraft,
   toInputs,
@@ -39,6 +41,8 @@ export function useMember(data: WorkspaceData) {
   }, []);
   const inputs = useMemo(() => toInputs(draft, data), [draft, data]);
   const live = useEvaluation(inputs);
+  const [history, setHistory] = useState(data.history);
+  const lastGoodDraft = useLastGood(draft, live.evaluation !== null);
   const body = useMemo(
     () => toBody(draft, template, { status: member.status, reason: member.reason }),
     [draft, template, member],
@@ -59,9 +63,12 @@ export function useMember(data: WorkspaceData) {
     const { evaluation } = live;
     const isSame = evaluation !== null && result !== null && sameFigures(toStoredResult(evaluation), result);
     setMember(outcome.member);
+    setHistory([savedLine(member, outcome.member), ...history]);
     setSaving({ kind: 'saved', isSame });
     return outcome.member;
   }
+
+  const putBack = () => change(lastGoodDraft.current);
 
   /** Reads the page again, dropping what is not saved. */
   function readAgain() {
@@ -73,8 +80,41 @@ export function useMember(data: WorkspaceData) {
     () => fieldFaults(saving.kind === 'refused' && live.faults.length === 0 ? saving.faults : live.faults),
     [saving, live.faults],
   );
-  return { member, draft, change, inputs, live, body, isDirty, saving, save, faults, readAgain };
+  return {
+    member,
+    draft,
+    change,
+    inputs,
+    live,
+    body,
+    isDirty,
+    saving,
+    save,
+    faults,
+    history,
+    putBack,
+    readAgain,
+  };
 }
+
+/** The draft as it was when it last held. */
+function useLastGood(draft: Draft, isGood: boolean) {
+  const last = useRef(draft);
+  useEffect(() => {
+    if (isGood) last.current = draft;
+  }, [draft, isGood]);
+  return last;
+}
+
+/** The record's line of a save, as the record will say it when it is read again. */
+const savedLine = (before: MemberView, after: MemberView): HistoryLine => ({
+  at: after.changed_at,
+  by: after.changed_by,
+  ...changesOf('member.save', {
+    before: bodyOf(before),
+    after: { ...bodyOf(after), version: after.version },
+  }),
+});
 
 export interface Live {
   /** Null where the inputs fail. */

@@ -15,6 +15,47 @@ function largest(arrangements: readonly Arrangement[], quantity: 'moment' | 'she
 
 type Placed = (x: number) => string;
 
+/** A stress as the action over one property of the section, the limit as a share of the strength. */
+type Stress = {
+  kind: 'bending' | 'shear';
+  title: string;
+  action: 'moment' | 'shear';
+  /** What the action is divided by. */
+  property: { value: number; purpose: 'section_modulus' | 'area' };
+  factor: number;
+  strength: number;
+  symbols: string;
+};
+
+function stressRow(
+  { kind, title, action, property, factor, strength, symbols }: Stress,
+  arrangements: readonly Arrangement[],
+  { publication, clause }: Criteria['strength']['source'],
+  place: Placed,
+  system: UnitSystemName,
+): CheckRow {
+  const { value, at, combination } = largest(arrangements, action);
+  const demand = Math.abs(value) / property.value;
+  const capacity = factor * strength;
+  const acting = { value: Math.abs(value), purpose: action === 'moment' ? 'moment' : 'force' } as const;
+  const limit = `${factor.toPrecision(4)} \\times ${texFigure(strength, 'stress', system)}`;
+  return {
+    id: kind,
+    kind,
+    title,
+    place: `${place(at)}, ${combination}`,
+    clause: `${publication}, ${clause}`,
+    demand,
+    capacity,
+    dimension: 'stress',
+    ratio: demand / capacity,
+    combination,
+    at,
+    symbols,
+    numbers: `${texQuotient(acting, property, 'stress', system)} \\le ${limit}`,
+  };
+}
+
 /**
  * Bending: σ = M/W_el ≤ k·f over every combination, M the largest of either sign, W_el the smaller elastic modulus.
  * Navier's formula; the factor k is the practice's own (criteria). No stability of the compression flange in it.
@@ -26,24 +67,16 @@ export function bendingCheck(
   place: Placed,
   system: UnitSystemName,
 ): CheckRow {
-  const governing = largest(arrangements, 'moment');
-  const demand = Math.abs(governing.value) / section.elasticModulus;
-  const capacity = strength.bending * section.bendingStrength;
-  return {
-    id: 'bending',
+  const stress: Stress = {
     kind: 'bending',
     title: 'Bending stress',
-    place: `${place(governing.at)}, ${governing.combination}`,
-    clause: `${strength.source.publication}, ${strength.source.clause}`,
-    demand,
-    capacity,
-    dimension: 'stress',
-    ratio: demand / capacity,
-    combination: governing.combination,
-    at: governing.at,
+    action: 'moment',
+    property: { value: section.elasticModulus, purpose: 'section_modulus' },
+    factor: strength.bending,
+    strength: section.bendingStrength,
     symbols: '\\sigma = \\frac{|M|}{W_{el}} \\le k\\,f',
-    numbers: `${texQuotient({ value: Math.abs(governing.value), purpose: 'moment' }, { value: section.elasticModulus, purpose: 'section_modulus' }, 'stress', system)} \\le ${strength.bending.toPrecision(4)} \\times ${texFigure(section.bendingStrength, 'stress', system)}`,
   };
+  return stressRow(stress, arrangements, strength.source, place, system);
 }
 
 /**
@@ -56,22 +89,14 @@ export function shearCheck(
   place: Placed,
   system: UnitSystemName,
 ): CheckRow {
-  const governing = largest(arrangements, 'shear');
-  const demand = Math.abs(governing.value) / section.shearAreaAtAxis;
-  const capacity = strength.shear * section.shearStrength;
-  return {
-    id: 'shear',
+  const stress: Stress = {
     kind: 'shear',
     title: 'Shear stress',
-    place: `${place(governing.at)}, ${governing.combination}`,
-    clause: `${strength.source.publication}, ${strength.source.clause}`,
-    demand,
-    capacity,
-    dimension: 'stress',
-    ratio: demand / capacity,
-    combination: governing.combination,
-    at: governing.at,
+    action: 'shear',
+    property: { value: section.shearAreaAtAxis, purpose: 'area' },
+    factor: strength.shear,
+    strength: section.shearStrength,
     symbols: '\\tau = \\frac{|V|\\,Q}{I\\,t} \\le k\\,f',
-    numbers: `${texQuotient({ value: Math.abs(governing.value), purpose: 'force' }, { value: section.shearAreaAtAxis, purpose: 'area' }, 'stress', system)} \\le ${strength.shear.toPrecision(4)} \\times ${texFigure(section.shearStrength, 'stress', system)}`,
   };
+  return stressRow(stress, arrangements, strength.source, place, system);
 }

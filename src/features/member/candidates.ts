@@ -1,7 +1,6 @@
 import type { CheckKind } from '@/engine/check';
 import { materialFor } from '@/engine/section';
-import type { SectionItem } from '@/features/section/section';
-import { toSectionValues } from '@/features/section/section';
+import { type SectionItem, toSectionValues } from '@/features/section/section';
 import { materialsFor } from '@/features/template/section-pick';
 import { evaluateMember, type MemberInputs } from './evaluate';
 import type { DraftSection } from './workspace';

@@ -47,8 +47,7 @@ export function QuantityField(props: QuantityFieldProps) {
     <div className={`min-w-0 px-14 pt-8 pb-9 ${error ? 'bg-error-wash' : ''}`}>
       <div className="flex items-baseline gap-7 text-schedule text-ink-2">
         <label htmlFor={id} className="min-w-0">
-          {symbol && <i className="mr-7 text-[1rem] font-semibold text-ink">{symbol}</i>}
-          {label}
+          {symbol && <i className="mr-4 text-[1rem] font-semibold text-ink">{symbol}</i>} {label}
         </label>
         {props.changedAt && (
           <span className="ml-auto">

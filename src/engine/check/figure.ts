@@ -2,6 +2,7 @@ import {
   formatFor,
   formatQuantity,
   fromUnit,
+  MINUS,
   type Purpose,
   THIN_SPACE,
   UNIT_SYSTEMS,
@@ -16,7 +17,7 @@ export const texFigure = (value: number, purpose: Purpose, system: UnitSystemNam
 
 function texOf(quantity: string): string {
   const [number = '', unit = ''] = quantity.split('\u00a0');
-  const figure = number.replaceAll(THIN_SPACE, '\\,').replace('\u2212', '-');
+  const figure = number.replaceAll(THIN_SPACE, '\\,').replace(MINUS, '-');
   const shown = unit.replaceAll('·', '\\cdot ').replaceAll(/[²³⁴⁶]/g, (sign) => POWERS[sign] ?? sign);
   return unit === '' ? figure : `${figure}\\,\\mathrm{${shown}}`;
 }
@@ -31,10 +32,7 @@ export function texQuotient(over: Term, under: Term, result: Purpose, system: Un
   const written = (term: Term, significant: number) =>
     formatQuantity(term.value, unitOf(term), { significant });
   const readBack = (term: Term, text: string) =>
-    fromUnit(
-      Number(text.split('\u00a0')[0]?.replaceAll(THIN_SPACE, '').replace('\u2212', '-')),
-      unitOf(term),
-    );
+    fromUnit(Number(text.split('\u00a0')[0]?.replaceAll(THIN_SPACE, '').replace(MINUS, '-')), unitOf(term));
   const shown = formatFor(over.value / under.value, result, system);
   let figures = FEWEST;
   let [top, bottom] = [written(over, figures), written(under, figures)];

@@ -1,6 +1,5 @@
+import { MINUS } from '../quantity/index';
 import type { Beam, Redundant, Support } from './types';
-
-const MINUS = '\u2212';
 
 /** A position in words: millimetres where that says it, else six figures. */
 export function metres(x: number): string {

@@ -9,7 +9,6 @@ const ENGINE_ORDER = [
   'linear',
   'model',
   'chart',
-  'combination',
   'beam',
   'stiffness',
   'proof',
@@ -17,7 +16,6 @@ const ENGINE_ORDER = [
   'section',
   'check',
   'template',
-  'selection',
   'sheet',
 ];
 

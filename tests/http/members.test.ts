@@ -5,8 +5,8 @@ import { verifyChain } from '@/features/audit/audit.server';
 import { findRevision } from '@/features/review/library.server';
 import { createDraft, takeStep } from '@/features/review/review.server';
 import { ask } from '../support/app';
-import { foundStockedPractice } from '../support/stocked';
 import { foundPractice } from '../support/practice';
+import { foundStockedPractice } from '../support/stocked';
 
 type Stocked = Awaited<ReturnType<typeof foundStockedPractice>>;
 let practice: Stocked;

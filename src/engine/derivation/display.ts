@@ -21,7 +21,11 @@ export function withUnit(si: number, unit: string, largest = Math.abs(si), like 
   return `${toTex(text)}\\,\\mathrm{${unitTex(unit)}}`;
 }
 
-function shown(value: number, reference: number, figures: number): string {
+/** Below the noise of arithmetic: 11.025 found in two ways must round one way. */
+const EXACT = 12;
+
+function shown(found: number, reference: number, figures: number): string {
+  const value = Number(found.toPrecision(EXACT));
   if (Math.abs(value) > REMAINDER * reference) return formatNumber(value, { significant: figures });
   const places = reference === 0 ? 0 : Math.max(0, figures - 1 - Math.floor(Math.log10(reference)));
   return formatNumber(Math.abs(value) < 0.5 * 10 ** -places ? 0 : value, { places });

@@ -68,7 +68,7 @@ export function gapSteps(worked: Worked, movements: Movements): DerivationStep[]
       extra: { figure: { structure: 'released' }, ...(charted && { charts: chartsOf(charted.terms) }) },
     } as const;
     const step = charted
-      ? calculate(beam.letters, { ...common, expression: charted.value })
+      ? calculate(beam.letters, { ...common, expression: charted.value, value: gaps[i]! })
       : integrated(worked, movements, common, unknown, null, gaps[i]!);
     beam.letters.define(gapTex(unknown), gaps[i]!, gapKind(unknown));
     return step;
@@ -127,7 +127,7 @@ function coefficientSteps(worked: Worked, movements: Movements): DerivationStep[
         },
       } as const;
       const step = charted
-        ? calculate(beam.letters, { ...common, expression: charted.value })
+        ? calculate(beam.letters, { ...common, expression: charted.value, value })
         : integrated(worked, movements, common, at, unit, value);
       const letter = beam.letters.define(flexibilityTex(at, unit), value, kind);
       if (i === j) return [step];

@@ -19,15 +19,13 @@ export async function readJson<S extends z.ZodType>(holder: Holder, schema: S): 
   return reading.value;
 }
 
-/** The body as JSON: neither too deep nor with a key that means a prototype. */
+/** The body as JSON, also where its type is not said: neither too deep nor with a key that means a prototype. */
 async function readBody({ request }: Holder): Promise<unknown> {
   const type = request.headers.get('content-type')?.split(';', 1)[0]?.trim().toLowerCase() ?? '';
-  if (type !== 'application/json' && !/^application\/[\w.-]+\+json$/.test(type))
-    throw new AppError(
-      'unsupported_media_type',
-      `The content type is ${type ? `“${type}”` : 'missing'}. Send application/json.`,
-      { headers: { Accept: 'application/json' } },
-    );
+  if (type !== '' && type !== 'application/json' && !/^application\/[\w.-]+\+json$/.test(type))
+    throw new AppError('unsupported_media_type', `The content type is “${type}”. Send application/json.`, {
+      headers: { Accept: 'application/json' },
+    });
   const text = decode(await readBytes(request));
   if (isTooDeep(text)) throw invalid([TOO_DEEP]);
   const value = parse(text);

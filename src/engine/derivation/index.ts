@@ -1,10 +1,2 @@
 export { derive } from './derive';
-export type {
-  ChartUse,
-  DerivationStep,
-  DeriveInput,
-  DisplayUnit,
-  Figure,
-  LoadName,
-  NamedLength,
-} from './types';
+export type { DerivationStep, DisplayUnit } from './types';

@@ -24,7 +24,7 @@ export type NamedSupport = {
 };
 
 /** A load with its letters; `x` is where it starts. */
-export type LetteredLoad = { load: NamedLoad; numeric: Load };
+type LetteredLoad = { load: NamedLoad; numeric: Load };
 
 /** The beam with a letter for everything in it. */
 export type NamedBeam = {

@@ -51,7 +51,7 @@ function ownCompliance({ kind, letter, support }: Unknown): Expression {
 }
 
 export const gapKind = (unknown: Unknown): Kind => moves(unknown);
-export const flexibilityKind = (at: Unknown, unit: Unknown): Kind =>
+const flexibilityKind = (at: Unknown, unit: Unknown): Kind =>
   `${moves(at)} per ${unit.kind === 'reaction' ? 'force' : 'moment'}`;
 
 /** One step for the gap at each redundant; defines its letter. */

@@ -39,7 +39,7 @@ export type Equilibrium = {
   support: NamedSupport | null;
 };
 
-export const shearTex = (name: string): string => `V_{${name}}`;
+const shearTex = (name: string): string => `V_{${name}}`;
 
 /**
  * Every reaction that is not a redundant, each from one equation with one unknown, in an order that can be followed by
@@ -123,7 +123,7 @@ export function partsOf(beam: NamedBeam, unknowns: readonly Unknown[]): Part[] {
   });
 }
 
-export function hingeName(beam: NamedBeam, x: number, k: number): string {
+function hingeName(beam: NamedBeam, x: number, k: number): string {
   const support = beam.supports.find((s) => s.x === x);
   return support?.letter ?? `h${beam.hinges.length > 1 ? k + 1 : ''}`;
 }
@@ -166,13 +166,13 @@ function solvedFor(part: Part, about: Action | null, wanted: Action): Expression
 }
 
 /** Downward. */
-export function loadForce(load: NamedLoad): Expression {
+function loadForce(load: NamedLoad): Expression {
   if (load.kind === 'point') return load.p;
   return load.kind === 'line' ? resultant(load, load.from).force : ZERO;
 }
 
 /** Clockwise about a point. */
-export function loadMoment(load: NamedLoad, about: Expression): Expression {
+function loadMoment(load: NamedLoad, about: Expression): Expression {
   switch (load.kind) {
     case 'point':
       return multiply(load.p, expand(subtract(load.at, about)));

@@ -14,10 +14,7 @@ export type DisplayUnit =
   | 'mrad/kNm';
 
 /** What to draw beside a step: the released beam under the loads, under a unit value of one redundant, or the beam. */
-export type Figure =
-  | { structure: 'released' }
-  | { structure: 'unit'; redundant: number }
-  | { structure: 'built' };
+type Figure = { structure: 'released' } | { structure: 'unit'; redundant: number } | { structure: 'built' };
 
 /** A published closed form that a step uses. */
 export type ChartUse = { id: string; title: string; source: string };

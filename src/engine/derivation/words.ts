@@ -7,7 +7,7 @@ export const countWord = (n: number): string => COUNTS[n] ?? String(n);
 export const sentence = (text: string): string => text.charAt(0).toUpperCase() + text.slice(1);
 
 /** "cantilever", "simple span", "two simple spans", "released beam" */
-export function nameReleased(pieces: readonly Piece[] | null): string {
+function nameReleased(pieces: readonly Piece[] | null): string {
   if (!pieces) return 'released beam';
   const cantilevers = pieces.filter(({ released }) => released.kind === 'cantilever').length;
   if (pieces.length === 1) return cantilevers === 1 ? 'cantilever' : 'simple span';
@@ -29,7 +29,7 @@ export const placeOf = ({ letter, kind, support }: Unknown): string =>
   kind === 'internal' ? place(letter, support !== null) : `at ${letter}`;
 
 /** "Deflection at B", "Slope at A", "Gap in slope over B" */
-export function nameMovement(unknown: Unknown): string {
+function nameMovement(unknown: Unknown): string {
   if (moves(unknown) === 'deflection') return `Deflection ${placeOf(unknown)}`;
   return unknown.kind === 'fixing' ? `Slope ${placeOf(unknown)}` : `Gap in slope ${placeOf(unknown)}`;
 }

@@ -10,7 +10,7 @@ export const LOAD_GROUP_NAMES: Record<LoadGroup, string> = {
   W: 'wind',
 };
 
-const factors = z.partialRecord(z.enum(LOAD_GROUPS), z.number().finite());
+const factors = z.partialRecord(z.enum(LOAD_GROUPS), z.number());
 const combination = z.strictObject({ name: z.string().min(1), factors });
 const source = z.strictObject({
   publication: z.string().min(1),

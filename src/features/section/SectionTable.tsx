@@ -4,7 +4,7 @@ import { GraduatedRule } from '@/components/drawing/GraduatedRule';
 import type { UnitSystemName } from '@/engine/quantity';
 import { paths } from '@/paths';
 import { keyOf } from './address';
-import { ColumnHead, columnsIn } from './columns';
+import { COLUMNS_BY_ID, ColumnHead, columnsIn } from './columns';
 import { shownName, toShown, unitOf } from './display';
 import { measureOf, type SectionQuery } from './query';
 import type { SectionItem } from './section';
@@ -26,6 +26,10 @@ export interface SectionTableProps {
 
 /** What a phone shows of a section beside its name. */
 const PHONE = ['mass', 'w_pl'];
+const phoneUnit = (id: string, system: UnitSystemName): string | undefined => {
+  const shown = PHONE.includes(id) ? COLUMNS_BY_ID.get(id) : undefined;
+  return shown && unitOf(shown.field, system);
+};
 const COLUMNS = { metric: columnsIn('metric'), us: columnsIn('us') };
 
 /** Where a key takes the chosen row. */
@@ -175,15 +179,15 @@ function Heads({ query, system, onSort }: SectionTableProps) {
             Section
           </button>
         </th>
-        {COLUMNS[system].map(({ id = '', meta }) => (
+        {[...COLUMNS_BY_ID].map(([id, { field, wide }]) => (
           <th
             key={id}
             scope="col"
-            className={`figure ${meta?.wide ? 'max-lg:hidden' : ''}`}
-            aria-sort={meta && sortOf(query, meta.field)}
+            className={`figure ${wide ? 'max-lg:hidden' : ''}`}
+            aria-sort={sortOf(query, field)}
           >
             <button type="button" className="sort" onClick={() => onSort(id)}>
-              {meta && <ColumnHead field={meta.field} system={system} />}
+              <ColumnHead field={field} system={system} />
             </button>
           </th>
         ))}
@@ -234,10 +238,8 @@ function SectionRow({ id, row, index, pins, chosen, uses, system, onChoose, onPi
       {row.getVisibleCells().map(({ id: cell, column: { columnDef, id: measure }, getContext }) => (
         <td
           key={cell}
-          className={`figure ${columnDef.meta?.wide ? 'max-lg:hidden' : ''}`}
-          data-phone={
-            columnDef.meta && PHONE.includes(measure) ? unitOf(columnDef.meta.field, system) : undefined
-          }
+          className={`figure ${COLUMNS_BY_ID.get(measure)?.wide ? 'max-lg:hidden' : ''}`}
+          data-phone={phoneUnit(measure, system)}
           data-before={measure === 'w_pl' ? 'plastic modulus' : undefined}
         >
           {flexRender(columnDef.cell, getContext())}

@@ -26,22 +26,20 @@ const SHOWN: readonly (readonly [SectionMeasure, 'always' | 'wide'])[] = [
 
 export const COLUMN_FIELDS = SHOWN.map(([measure]) => SECTION_MEASURES[measure]);
 
-declare module '@tanstack/react-table' {
-  interface ColumnMeta<TData, TValue> {
-    readonly field: SectionField;
-    readonly wide: boolean;
-  }
-}
+/** What the columns show, by their ids. `wide`: on wide screens alone. */
+export const COLUMNS_BY_ID: ReadonlyMap<string, { readonly field: SectionField; readonly wide: boolean }> =
+  new Map(
+    SHOWN.map(([measure, when]) => [measure, { field: SECTION_MEASURES[measure], wide: when === 'wide' }]),
+  );
 
 const column = createColumnHelper<SectionItem>();
 
 /** The columns of figures in a unit system. */
 export const columnsIn = (system: UnitSystemName): ColumnDef<SectionItem, number | null>[] =>
-  SHOWN.map(([measure, when]) => {
+  SHOWN.map(([measure]) => {
     const field = SECTION_MEASURES[measure];
     return column.accessor((item) => measureOf(item, field), {
       id: measure,
-      meta: { field, wide: when === 'wide' },
       header: measure,
       cell: ({ row }) => figureOf(row.original, field, system),
     });

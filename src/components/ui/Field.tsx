@@ -11,10 +11,10 @@ interface FrameProps {
   children: ReactNode;
 }
 
-export const noteId = (controlId: string) => `${controlId}-note`;
+const noteId = (controlId: string) => `${controlId}-note`;
 
 /** Label above, control, then one line that is either help or what is wrong. */
-export function FieldFrame({ label, help, helpHref, error, controlId, children }: FrameProps) {
+function FieldFrame({ label, help, helpHref, error, controlId, children }: FrameProps) {
   return (
     <div className="min-w-0">
       <label htmlFor={controlId} className="caps mb-2 block">

@@ -4,9 +4,6 @@ export type {
   JudgedRow,
   SheetBlock,
   SheetCaution,
-  SheetColumn,
   SheetFigure,
   SheetInput,
-  SheetResult,
-  SheetRow,
 } from './types';

@@ -31,7 +31,7 @@ export type SheetInput = {
   readonly cautions: readonly SheetCaution[];
 };
 
-export type SheetSection = {
+type SheetSection = {
   readonly designation: string;
   readonly table: string;
   readonly edition: number;
@@ -46,7 +46,7 @@ type Found = { readonly reactions: readonly Reaction[]; readonly extremes: Extre
 type Combined = Found & { readonly combination: Combination };
 
 /** The part of a stored result that is printed. */
-export type SheetResult = {
+type SheetResult = {
   readonly beam: Beam;
   readonly ei: number;
   readonly section: {

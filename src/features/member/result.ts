@@ -17,14 +17,14 @@ export type StoredSolution = Omit<Solution, 'diagrams'> & {
 };
 
 /** What a combination came to, without its diagrams. */
-export type StoredArrangement = {
+type StoredArrangement = {
   readonly combination: Combination;
   readonly reactions: readonly Reaction[];
   readonly extremes: Solution['extremes'];
 };
 
 /** What the server found for a member, whole: a sheet is printed from it alone. SI, the engine's signs. */
-export type MemberResult = {
+type MemberResult = {
   readonly kind: 'result';
   readonly beam: Beam;
   readonly ei: number;
@@ -47,7 +47,7 @@ export type MemberResult = {
 };
 
 /** Kept in place of a result that its proof does not bear out. */
-export type MemberFault = { readonly kind: 'fault'; readonly message: string; readonly proof: ProofLine };
+type MemberFault = { readonly kind: 'fault'; readonly message: string; readonly proof: ProofLine };
 
 export type StoredResult = MemberResult | MemberFault;
 

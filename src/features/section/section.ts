@@ -7,7 +7,7 @@ const radius = z.number().nonnegative();
 const flanged = { h: length, b: length, tw: length, tf: length, r: radius };
 
 /** Dimensions in m, as the engine takes them. */
-export const sectionDimensionsSchema = z.discriminatedUnion('shape', [
+const sectionDimensionsSchema = z.discriminatedUnion('shape', [
   z.strictObject({ shape: z.literal('i'), ...flanged }),
   z.strictObject({ shape: z.literal('channel'), ...flanged }),
   z.strictObject({ shape: z.enum(['rhs', 'shs']), h: length, b: length, t: length, ro: radius, ri: radius }),

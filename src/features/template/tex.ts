@@ -3,7 +3,3 @@ import katex from 'katex';
 /** TeX as HTML with the KaTeX faces. A formula that cannot be set is shown as it is written. */
 export const setTex = (tex: string, isDisplay = true): string =>
   katex.renderToString(tex, { displayMode: isDisplay, throwOnError: false, output: 'htmlAndMathml' });
-
-/** The same as MathML alone, which a browser sets without further fonts and styles: for pages before their script runs. */
-export const setMath = (tex: string): string =>
-  katex.renderToString(tex, { displayMode: true, throwOnError: false, output: 'mathml' });

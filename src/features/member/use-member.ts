@@ -48,8 +48,7 @@ export function useMember(data: WorkspaceData) {
     [draft, template, member],
   );
   const isDirty = useMemo(() => differencesOf(bodyOf(member), body).length > 0, [member, body]);
-  const [isLeaving, setLeaving] = useState(false);
-  useUnsavedGuard(isDirty && !isLeaving);
+  const readAgain = useReadAgain(isDirty);
 
   /** Sends what stands in the fields, or what is given instead, over the version that was read. */
   async function save(sent: SaveMember = body, over = member.version): Promise<MemberView | null> {
@@ -70,12 +69,6 @@ export function useMember(data: WorkspaceData) {
 
   const putBack = () => change(lastGoodDraft.current);
 
-  /** Reads the page again, dropping what is not saved. */
-  function readAgain() {
-    setLeaving(true);
-    setTimeout(() => location.reload());
-  }
-
   const faults: FieldFaults = useMemo(
     () => fieldFaults(saving.kind === 'refused' && live.faults.length === 0 ? saving.faults : live.faults),
     [saving, live.faults],
@@ -94,6 +87,16 @@ export function useMember(data: WorkspaceData) {
     history,
     putBack,
     readAgain,
+  };
+}
+
+/** Asks before the page is left with something unsaved; gives back what reads the page again and drops it unasked. */
+function useReadAgain(isDirty: boolean) {
+  const [isLeaving, setLeaving] = useState(false);
+  useUnsavedGuard(isDirty && !isLeaving);
+  return () => {
+    setLeaving(true);
+    setTimeout(() => location.reload());
   };
 }
 

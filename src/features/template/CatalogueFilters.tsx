@@ -17,15 +17,24 @@ interface FiltersProps {
 
 /** Arrangement and load drawn, status and tag in words; each a link, so that it works before the script does. */
 export function CatalogueFilters(props: FiltersProps) {
-  const count = (facet: Facet) => countBy(props.found, props.query, facet);
+  const propsOf = (facet: Facet) => {
+    const counts = countBy(props.found, props.query, facet);
+    return (value: string, name: string): OneProps => ({
+      ...props,
+      facet,
+      value,
+      name,
+      count: counts.get(value) ?? 0,
+    });
+  };
   const [arrangements, loads, states, tags] = [
-    count('arrangements'),
-    count('loadKinds'),
-    count('states'),
-    count('tags'),
-  ];
+    propsOf('arrangements'),
+    propsOf('loadKinds'),
+    propsOf('states'),
+    propsOf('tags'),
+  ] as const;
   const allTags = [...new Set(props.cards.flatMap(({ row }) => row.tags))].sort(
-    (a, b) => (tags.get(b) ?? 0) - (tags.get(a) ?? 0) || a.localeCompare(b),
+    (a, b) => tags(b, b).count - tags(a, a).count || a.localeCompare(b),
   );
   return (
     <nav
@@ -35,56 +44,26 @@ export function CatalogueFilters(props: FiltersProps) {
       <Group title="Support arrangement">
         <div className="grid grid-cols-3 gap-x-8 gap-y-4 max-md:grid-cols-2">
           {entriesOf(ARRANGEMENT_NAMES).map(([value, name]) => (
-            <Drawn
-              key={value}
-              {...props}
-              facet="arrangements"
-              value={value}
-              name={name}
-              glyph={ARRANGEMENT_GLYPHS[value]}
-              count={arrangements.get(value) ?? 0}
-            />
+            <Drawn key={value} {...arrangements(value, name)} glyph={ARRANGEMENT_GLYPHS[value]} />
           ))}
         </div>
       </Group>
       <Group title="Load">
         <div className="grid grid-cols-2 gap-x-8 gap-y-4">
           {entriesOf(LOAD_KIND_NAMES).map(([value, name]) => (
-            <Drawn
-              key={value}
-              {...props}
-              facet="loadKinds"
-              value={value}
-              name={name}
-              glyph={LOAD_GLYPHS[value]}
-              count={loads.get(value) ?? 0}
-            />
+            <Drawn key={value} {...loads(value, name)} glyph={LOAD_GLYPHS[value]} />
           ))}
         </div>
       </Group>
       <Group title="Status">
         {REVISION_STATES.map((value) => (
-          <Ticked
-            key={value}
-            {...props}
-            facet="states"
-            value={value}
-            name={STATUS_WORDS[value]}
-            count={states.get(value) ?? 0}
-          />
+          <Ticked key={value} {...states(value, STATUS_WORDS[value])} />
         ))}
       </Group>
       <Group title="Tag">
         <div className="max-h-150 overflow-y-auto" tabIndex={-1}>
           {allTags.map((value) => (
-            <Ticked
-              key={value}
-              {...props}
-              facet="tags"
-              value={value}
-              name={value}
-              count={tags.get(value) ?? 0}
-            />
+            <Ticked key={value} {...tags(value, value)} />
           ))}
         </div>
       </Group>

@@ -62,24 +62,36 @@ export function SectionPick({ section, system, fault, onPick }: SectionPickProps
         error={message ?? wrong ?? undefined}
       />
       {kit && found.length > 0 && (
-        <ul className="absolute inset-x-14 z-10 border border-ink bg-paper" aria-label="Sections found">
-          {found.map((one) => (
-            <li key={`${one.table} ${one.values.designation}`}>
-              <button
-                type="button"
-                onClick={() => take(kit, one)}
-                className="flex min-h-34 w-full items-baseline gap-8 px-8 py-5 text-left hover:bg-paper-2 pointer-coarse:min-h-44"
-              >
-                <span className="font-semibold">{one.values.designation}</span>
-                <span className="ml-auto text-note whitespace-nowrap text-ink-2">
-                  {formatFor(one.values.massKgM, 'mass_per_length', system)}
-                </span>
-              </button>
-            </li>
-          ))}
-        </ul>
+        <FoundList found={found} system={system} onTake={(one) => take(kit, one)} />
       )}
     </div>
+  );
+}
+
+interface FoundListProps {
+  readonly found: readonly FoundSection[];
+  readonly system: UnitSystemName;
+  readonly onTake: (section: FoundSection) => void;
+}
+
+function FoundList({ found, system, onTake }: FoundListProps) {
+  return (
+    <ul className="absolute inset-x-14 z-10 border border-ink bg-paper" aria-label="Sections found">
+      {found.map((one) => (
+        <li key={`${one.table} ${one.values.designation}`}>
+          <button
+            type="button"
+            onClick={() => onTake(one)}
+            className="flex min-h-34 w-full items-baseline gap-8 px-8 py-5 text-left hover:bg-paper-2 pointer-coarse:min-h-44"
+          >
+            <span className="font-semibold">{one.values.designation}</span>
+            <span className="ml-auto text-note whitespace-nowrap text-ink-2">
+              {formatFor(one.values.massKgM, 'mass_per_length', system)}
+            </span>
+          </button>
+        </li>
+      ))}
+    </ul>
   );
 }
 

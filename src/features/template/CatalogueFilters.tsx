@@ -15,6 +15,9 @@ interface FiltersProps {
   readonly onToggle: (facet: Facet, value: string) => void;
 }
 
+/** Tags shown before the others are unfolded: as many as fit beside the drawn filters. */
+const FIRST_TAGS = 5;
+
 /** Arrangement and load drawn, status and tag in words; each a link, so that it works before the script does. */
 export function CatalogueFilters(props: FiltersProps) {
   const propsOf = (facet: Facet) => {
@@ -36,13 +39,16 @@ export function CatalogueFilters(props: FiltersProps) {
   const allTags = [...new Set(props.cards.flatMap(({ row }) => row.tags))].sort(
     (a, b) => tags(b, b).count - tags(a, a).count || a.localeCompare(b),
   );
+  // A filter that is on is never folded away.
+  const isFirst = (tag: string, at: number) => at < FIRST_TAGS || props.query.tags.includes(tag);
+  const more = allTags.filter((tag, at) => !isFirst(tag, at));
   return (
     <nav
       aria-label="Filters"
-      className="flex border-b-2 border-ink max-md:overflow-x-auto md:grid md:grid-cols-2 lg:grid-cols-[minmax(0,386fr)_minmax(0,290fr)_140px_168px]"
+      className="flex border-b-2 border-ink max-md:overflow-x-auto md:grid md:grid-cols-2 min-[1380px]:grid-cols-[minmax(0,400fr)_minmax(0,330fr)_126px_150px]"
     >
       <Group title="Support arrangement">
-        <div className="grid grid-cols-3 gap-x-8 gap-y-4 max-md:grid-cols-2">
+        <div className="grid grid-cols-3 gap-x-4 gap-y-4 max-md:grid-cols-2">
           {entriesOf(ARRANGEMENT_NAMES).map(([value, name]) => (
             <Drawn key={value} {...arrangements(value, name)} glyph={ARRANGEMENT_GLYPHS[value]} />
           ))}
@@ -61,11 +67,19 @@ export function CatalogueFilters(props: FiltersProps) {
         ))}
       </Group>
       <Group title="Tag">
-        <div className="max-h-150 overflow-y-auto" tabIndex={-1}>
-          {allTags.map((value) => (
-            <Ticked key={value} {...tags(value, value)} />
-          ))}
-        </div>
+        {allTags.filter(isFirst).map((value) => (
+          <Ticked key={value} {...tags(value, value)} />
+        ))}
+        {more.length > 0 && (
+          <details>
+            <summary className="link min-h-26 py-4 text-schedule pointer-coarse:py-13">
+              {more.length} more {more.length === 1 ? 'tag' : 'tags'}
+            </summary>
+            {more.map((value) => (
+              <Ticked key={value} {...tags(value, value)} />
+            ))}
+          </details>
+        )}
       </Group>
     </nav>
   );
@@ -75,7 +89,7 @@ const entriesOf = <K extends string>(record: Record<K, string>) => Object.entrie
 
 function Group({ title, children }: { readonly title: string; readonly children: ReactNode }) {
   return (
-    <section className="min-w-0 border-rule px-16 py-10 max-md:flex-[0_0_310px] max-md:border-l md:nth-[even]:border-l md:max-lg:nth-[n+3]:border-t lg:border-l lg:first:border-l-0">
+    <section className="min-w-0 border-rule px-14 py-10 max-md:flex-[0_0_310px] max-md:border-l md:nth-[even]:border-l md:max-[1379px]:nth-[n+3]:border-t min-[1380px]:border-l min-[1380px]:first:border-l-0">
       <h2 className="caps mb-6">{title}</h2>
       {children}
     </section>

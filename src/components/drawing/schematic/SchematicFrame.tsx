@@ -34,6 +34,7 @@ export function SchematicMember({
   size: SchematicSize;
 }) {
   const { base } = size;
+  const reach = size.support / 0.7;
   const supports = schematicSupports(beam);
   return (
     <>
@@ -43,8 +44,9 @@ export function SchematicMember({
       ))}
       {supports.map(({ at, rise }) => {
         if (rise === 0) return null;
-        const x = toX(at) + 15;
-        const [from, to] = rise < 0 ? [base + 5, base + 22] : [base + 22, base + 5];
+        const x = toX(at) + 15 * reach;
+        const [near, far] = [base + 5 * reach, base + 22 * reach];
+        const [from, to] = rise < 0 ? [near, far] : [far, near];
         return <path key={at} className="thin filled" d={arrowPath(x, from, x, to, 6, 2)} />;
       })}
       {(beam.hinges ?? []).map((at) => (

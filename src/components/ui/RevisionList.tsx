@@ -7,14 +7,14 @@ export interface RevisionRow {
 }
 
 /** Builds up from the title block's top edge, newest first. */
-export function RevisionList({ rows }: { rows: readonly RevisionRow[] }) {
+export function RevisionList({ rows, label }: { rows: readonly RevisionRow[]; label: string }) {
   return (
     <div className="col-span-6 p-0">
       <table className="w-full border-collapse text-left text-schedule leading-17">
         <thead>
           <tr className="caps">
-            <th scope="col" className="w-34 py-5 pl-10">
-              Rev
+            <th scope="col" className="w-44 py-5 pl-10">
+              {label}
             </th>
             <th scope="col">Date</th>
             <th scope="col">By</th>

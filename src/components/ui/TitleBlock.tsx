@@ -18,6 +18,8 @@ export interface TitleBlockProps {
   statusWord?: string | undefined;
   reference?: string | undefined;
   revision?: string | undefined;
+  /** What the revision is called: an edition of a section table is no revision. */
+  revisionLabel?: string | undefined;
   /** Newest first. */
   revisions?: readonly RevisionRow[];
   action?: BlockAction | undefined;
@@ -29,10 +31,11 @@ export interface TitleBlockProps {
 /** Bottom right of every sheet: whose it is, where it stands, and the one main action. */
 export function TitleBlock(props: TitleBlockProps) {
   const { org, orgNote, jobNumber, kind, title, status, reference, revision, revisions, others } = props;
+  const { revisionLabel = 'Rev' } = props;
   const identity = status !== undefined || reference !== undefined || revision !== undefined;
   return (
     <section id="title-block" data-title-block tabIndex={-1} aria-label="Title block" className="title-block">
-      {revisions && revisions.length > 0 && <RevisionList rows={revisions} />}
+      {revisions && revisions.length > 0 && <RevisionList rows={revisions} label={revisionLabel} />}
       {jobNumber === undefined ? (
         <div className="col-span-6 flex items-center gap-9 py-8">
           <span className="text-zone font-normal">{org}</span>
@@ -63,8 +66,8 @@ export function TitleBlock(props: TitleBlockProps) {
               {status ? <StatusStamp status={status} word={props.statusWord} /> : <Unsigned />}
             </div>
           </div>
-          <Compartment span="col-span-2" label="Ref" value={reference} size="text-ref" />
-          <Compartment span="col-span-1" label="Rev" value={revision ?? '–'} size="text-revision" />
+          <Compartment span="col-span-2" label="Ref" value={reference} size={refSize(reference)} />
+          <Compartment span="col-span-1" label={revisionLabel} value={revision ?? '–'} size="text-revision" />
         </>
       )}
       {props.children}
@@ -73,6 +76,9 @@ export function TitleBlock(props: TitleBlockProps) {
     </section>
   );
 }
+
+/** A long reference is set smaller, so that no word of it breaks. */
+const refSize = (reference = '') => (reference.length > 8 ? 'text-[1rem] leading-28' : 'text-ref');
 
 function Label({ children }: { children: ReactNode }) {
   return <span className="caps mb-1 block">{children}</span>;

@@ -10,6 +10,7 @@ interface TitleStripProps {
   statusWord?: string | undefined;
   reference?: string | undefined;
   revision?: string | undefined;
+  revisionLabel?: string | undefined;
   action?: BlockAction | undefined;
 }
 
@@ -18,7 +19,7 @@ interface TitleStripProps {
  * `title-strip.ts` (loaded by the sheet layout) slides it; until then it is inert and out of sight.
  */
 export function TitleStrip(props: TitleStripProps) {
-  const { kind, title, status, reference, revision, action } = props;
+  const { kind, title, status, reference, revision, revisionLabel = 'Rev', action } = props;
   return (
     <section
       data-title-strip
@@ -33,7 +34,7 @@ export function TitleStrip(props: TitleStripProps) {
         <b className="truncate font-semibold">{title}</b>
       </div>
       {reference && <Cell label="Ref">{reference}</Cell>}
-      {revision && <Cell label="Rev">{revision}</Cell>}
+      {revision && <Cell label={revisionLabel}>{revision}</Cell>}
       {status && (
         <Cell label="Status">
           <StatusStamp status={status} word={props.statusWord} />

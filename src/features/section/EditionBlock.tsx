@@ -27,6 +27,7 @@ export function EditionBlock({ practice, chosen, edition }: EditionBlockProps) {
     status: edition?.state,
     reference: edition?.reference,
     revision: edition && String(edition.edition),
+    revisionLabel: 'Edn',
     action,
   };
   return (

@@ -11,13 +11,15 @@ import { useWidth } from './use-width';
 const MOST = 4;
 const TALLEST = 172;
 
-/** Up to four sections on one ground line at one scale, numbered as in the schedule. */
+/** Up to four sections on one ground line at one scale, numbered as in the schedule where they are pinned there. */
 export function OutlineRow({
   sections,
   format,
+  isNumbered = true,
 }: {
   sections: readonly OutlinedSection[];
   format: DrawingFormat;
+  isNumbered?: boolean;
 }) {
   const host = useRef<HTMLDivElement>(null);
   const width = useWidth(host, 600);
@@ -29,7 +31,9 @@ export function OutlineRow({
   const height = ground + 76;
   // Where names would meet, the numbers alone stand under their sections; the schedule names them.
   const namesFit = shown.every(({ name }) => textWidth(name, 14, 600) + 40 <= slot);
-  const label = shown.map((section, i) => `${i + 1}, ${outlineLabel(section, format)}`).join(' ');
+  const label = shown
+    .map((section, i) => `${isNumbered ? `${i + 1}, ` : ''}${outlineLabel(section, format)}`)
+    .join(' ');
   return (
     <div ref={host}>
       <svg
@@ -46,10 +50,14 @@ export function OutlineRow({
           return (
             <g key={section.name}>
               <SectionFigure section={section} scale={scale} cx={cx} ground={ground} format={format} />
-              <circle cx={bubble} cy={ground + 36} r={10} className="pinned" />
-              <text x={bubble} y={ground + 40} textAnchor="middle" className="bubble-letter">
-                {i + 1}
-              </text>
+              {isNumbered && (
+                <>
+                  <circle cx={bubble} cy={ground + 36} r={10} className="pinned" />
+                  <text x={bubble} y={ground + 40} textAnchor="middle" className="bubble-letter">
+                    {i + 1}
+                  </text>
+                </>
+              )}
               {namesFit && (
                 <text x={cx} y={ground + 41} textAnchor="middle" className="strip-name">
                   {section.name}

@@ -7,6 +7,8 @@ import type { SectionItem } from './section';
 
 interface ComparisonProps {
   readonly pinned: readonly SectionItem[];
+  /** Shown where nothing is pinned. */
+  readonly chosen: SectionItem | null;
   readonly system: UnitSystemName;
 }
 
@@ -27,22 +29,24 @@ function difference(item: SectionItem, first: SectionItem, field: SectionField):
   return `${value >= from ? `+${percent}` : percent} %`;
 }
 
-/** What the pinned sections are, and by how much they differ from the first. */
-export function Comparison({ pinned, system }: ComparisonProps) {
-  const [first, second] = pinned;
+/** What the pinned sections are, and by how much they differ from the first; the chosen one while none is pinned. */
+export function Comparison({ pinned, chosen, system }: ComparisonProps) {
+  const isPinned = pinned.length > 0;
+  const shown = isPinned || chosen === null ? pinned : [chosen];
+  const [first] = shown;
   return (
     <section className="zone">
-      <ZoneHeading letter="B">Compared with 1</ZoneHeading>
-      {first && second ? (
+      <ZoneHeading letter="B">{pinned.length > 1 ? 'Compared with 1' : 'At a glance'}</ZoneHeading>
+      {first && (
         <table className="schedule">
           <thead>
             <tr>
               <th scope="col">
                 <span className="sr-only">Property</span>
               </th>
-              {pinned.map((item, i) => (
+              {shown.map((item, i) => (
                 <th key={`${item.table} ${item.designation}`} scope="col" className="figure">
-                  {i + 1}
+                  {isPinned && i + 1}
                   <small className="whitespace-normal">{shownName(item.designation)}</small>
                 </th>
               ))}
@@ -54,7 +58,7 @@ export function Comparison({ pinned, system }: ComparisonProps) {
                 <th scope="row">
                   <FieldName field={field} system={system} />
                 </th>
-                {pinned.map((item, i) => (
+                {shown.map((item, i) => (
                   <td key={`${item.table} ${item.designation}`} className="figure">
                     {figureOf(item, field, system)}
                     {i > 0 && <small>{difference(item, first, field)}</small>}
@@ -64,9 +68,8 @@ export function Comparison({ pinned, system }: ComparisonProps) {
             ))}
           </tbody>
         </table>
-      ) : (
-        <p className="text-ink-2">Pin two sections or more to compare them.</p>
       )}
+      {pinned.length < 2 && <p className="mt-10 text-ink-2">Pin two sections or more to compare them.</p>}
     </section>
   );
 }

@@ -9,38 +9,44 @@ import type { SectionItem } from './section';
 
 interface PinTrayProps {
   readonly pinned: readonly SectionItem[];
+  /** Drawn where nothing is pinned. */
+  readonly chosen: SectionItem | null;
   readonly editions: readonly EditionView[];
   readonly system: UnitSystemName;
   readonly onUnpinAll: () => void;
 }
 
-/** The pinned sections on one ground line, at one scale. */
-export function PinTray({ pinned, editions, system, onUnpinAll }: PinTrayProps) {
+/** The pinned sections on one ground line, at one scale; the chosen one while none is pinned. */
+export function PinTray({ pinned, chosen, editions, system, onUnpinAll }: PinTrayProps) {
   const axes = new Map(editions.map((edition) => [edition.table, edition.axes]));
+  const isPinned = pinned.length > 0;
+  const drawn = isPinned || chosen === null ? pinned : [chosen];
   return (
     <section className="zone">
       <ZoneHeading
         letter="A"
         note={
-          pinned.length > 0 && (
+          isPinned && (
             <Button tone="text" onClick={onUnpinAll}>
               Unpin all
             </Button>
           )
         }
       >
-        Pinned, drawn to one scale
+        {isPinned ? 'Pinned, drawn to one scale' : 'Chosen, drawn to scale'}
       </ZoneHeading>
-      {pinned.length === 0 ? (
-        <p className="text-ink-2">
-          Nothing is pinned. Pin up to four sections with the ring in their row, or with the key P, and they
-          are drawn here side by side.
-        </p>
-      ) : (
+      {drawn.length > 0 && (
         <OutlineRow
-          sections={pinned.map((item) => outlineOf(item, axes.get(item.table), system))}
+          sections={drawn.map((item) => outlineOf(item, axes.get(item.table), system))}
           format={DRAWING_FORMATS[system]}
+          isNumbered={isPinned}
         />
+      )}
+      {!isPinned && (
+        <p className="mt-10 text-ink-2">
+          Pin up to four sections, with the ring in their row or the key P, and they are drawn here side by
+          side.
+        </p>
       )}
     </section>
   );

@@ -161,8 +161,10 @@ function Rule({
 }
 
 /** The sort that a column is under, for its head. */
-function sortOf(query: SectionQuery, field: string): 'ascending' | 'descending' | undefined {
-  const { field: by, descending } = query.sort ?? { field: 'mass_kg_m', descending: false };
+function sortOf({ q, sort }: SectionQuery, field: string): 'ascending' | 'descending' | undefined {
+  // Answers to a search stand in the order of how well they fit.
+  const unsorted = { field: q === '' ? 'mass_kg_m' : null, descending: false };
+  const { field: by, descending } = sort ?? unsorted;
   if (by !== field) return undefined;
   return descending ? 'descending' : 'ascending';
 }

@@ -2,8 +2,8 @@ import { useVirtualizer } from '@tanstack/react-virtual';
 import { useEffect, useRef, useState } from 'react';
 
 const ROW = { wide: 28, phone: 58 };
-const HEAD = 58;
-const FIRST_PAINT = { width: 1200, height: 422 };
+const HEAD = 62;
+const FIRST_PAINT = { width: 1200, height: 426 };
 
 function useIsPhone(): boolean {
   const [isPhone, setIsPhone] = useState(false);

@@ -11,7 +11,10 @@ import { drawnName } from './names';
 type Named = Pick<Instance, 'dimensions' | 'loadNames'>;
 
 interface BeamResultsProps
-  extends Pick<ElevationStripProps, 'depth' | 'envelopes' | 'reactions' | 'deflectionLimit' | 'width'> {
+  extends Pick<
+    ElevationStripProps,
+    'depth' | 'envelopes' | 'fault' | 'reactions' | 'deflectionLimit' | 'width'
+  > {
   readonly beam: Beam;
   readonly instance: Named;
   /** Null where inputs fail: then `beam` is the last good one, drawn dashed and without results. */

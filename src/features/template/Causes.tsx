@@ -1,5 +1,5 @@
 import { Button } from '@/components/ui/Button';
-import { type Cause, stopTitle } from './faults';
+import { type Cause, saidAndAdvice, stopTitle } from './faults';
 
 interface CausesProps {
   readonly causes: readonly Cause[];
@@ -24,11 +24,13 @@ export function Causes({ causes, onPutBack, lastGood }: CausesProps) {
       </h3>
       <ul>
         {causes.map(({ symbol, title, message }) => {
+          const [said, advice] = saidAndAdvice(message);
+          const isNamed = said.startsWith(title);
           const text = symbol === null ? null : lastGood(symbol);
           return (
             <li key={`${symbol} ${message}`} className="border-b border-rule py-8">
-              <b className="font-semibold">{title}</b>
-              <p className="text-ink-2">{message}</p>
+              <b className="font-semibold">{isNamed ? said : title}</b>
+              <p className="text-ink-2">{isNamed ? advice : message}</p>
               <div className="mt-6">
                 <Button size="small" onClick={() => onPutBack(symbol)}>
                   {text === null ? 'Put the last good values back' : `Put back ${text}`}

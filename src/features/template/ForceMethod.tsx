@@ -26,6 +26,8 @@ interface ForceMethodProps {
   readonly onChoose: (releases: readonly Release[]) => void;
   /** Shown until the script that works them is here. */
   readonly initial: WorkedSteps;
+  /** Which values it is worked with. */
+  readonly note?: string | undefined;
   /** Letters of the two zones. */
   readonly letters?: readonly [string, string];
 }
@@ -38,6 +40,7 @@ export const ForceMethod = memo(function ForceMethod({
   releases,
   onChoose,
   initial,
+  note = 'With these numbers',
   letters = ['C', 'D'],
 }: ForceMethodProps) {
   const host = useRef<HTMLDivElement>(null);
@@ -61,7 +64,7 @@ export const ForceMethod = memo(function ForceMethod({
       </ZoneHeading>
       <RedundantChoice beam={beam} solution={solution} chosen={chosen} onChoose={onChoose} />
       <div className="mt-20">
-        <ZoneHeading letter={letters[1]} note="With these numbers">
+        <ZoneHeading letter={letters[1]} note={note}>
           {beam.degree > 0 ? 'Compatibility, worked' : 'Worked'}
         </ZoneHeading>
         {beam.degree > 0 && (

@@ -8,7 +8,7 @@ import { paths } from '@/paths';
 import { BeamResults } from './BeamResults';
 import { Causes } from './Causes';
 import { ForceMethod } from './ForceMethod';
-import { fieldFaults, toCauses } from './faults';
+import { fieldFaults, toCauses, toDrawingFault } from './faults';
 import { toResultLines, toRuleLines } from './lines';
 import { ParameterFields } from './ParameterFields';
 import { dayText, type TemplatePageData } from './page';
@@ -107,6 +107,7 @@ function ElevationZone({ data, page }: ZoneProps) {
           system={data.system}
           depth={values.section?.resolved.depth}
           notDrawn={causes[0] && `Not drawn: see ${causes[0].title.toLowerCase()}.`}
+          fault={toDrawingFault(data.template, causes)}
           onEdit={focusField}
         />
       </div>
@@ -136,6 +137,7 @@ function LowerZones({ data, page, action }: ZoneProps & { readonly action: Block
           releases={page.releases}
           onChoose={page.setReleases}
           initial={data.worked}
+          note={note}
         />
       </section>
       <div className="min-w-0 border-ink max-md:border-t lg:border-l">

@@ -1,5 +1,6 @@
 import type { Template } from '@/engine/template';
 import type { Fault } from '@/lib/app-error';
+import { drawnName } from './names';
 
 /** What is wrong, by its place in the fields: "L", "w/G", "loads/1/x"; '' for what has none. */
 export type FieldFaults = ReadonlyMap<string, string>;
@@ -32,6 +33,23 @@ export const toCauses = ({ parameters }: Pick<Template, 'parameters'>, faults: r
       message,
     };
   });
+
+/** What was given, and what to give instead: the first sentence of a message, and the rest. */
+export function saidAndAdvice(message: string): [said: string, advice: string] {
+  const end = message.indexOf('. ');
+  return end < 0 ? [message, ''] : [message.slice(0, end), message.slice(end + 2)];
+}
+
+/** The first length that is wrong, for the cloud over the dimensions of the last good drawing. */
+export function toDrawingFault({ parameters }: Pick<Template, 'parameters'>, causes: readonly Cause[]) {
+  for (const { symbol, message } of causes) {
+    const parameter = parameters.find((one) => one.symbol === symbol);
+    if (parameter?.kind !== 'quantity' || parameter.dimension !== 'length') continue;
+    const [text, advice] = saidAndAdvice(message);
+    return { text, advice, place: drawnName(parameter.tex) };
+  }
+  return undefined;
+}
 
 /** "Two inputs stop the drawing". */
 export function stopTitle(causes: readonly Cause[]): string {

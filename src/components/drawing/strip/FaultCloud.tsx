@@ -3,10 +3,13 @@ import { cloudPath } from '../marks/paths';
 import type { ElevationLayout } from './elevation-layout';
 import type { Frame } from './frame';
 
-/** What stops the drawing, as it is written on it: "L = 0", "Give a span of 1 to 18 m". */
-export type DrawingFault = { text: string; advice: string };
+/**
+ * What stops the drawing, as it is written on it: "Span is 0 m", "Give 0.3 m to 30 m." `place` is the length's symbol, whose figure
+ * is clouded.
+ */
+export type DrawingFault = { text: string; advice: string; place?: string | undefined };
 
-/** A cloud over the span's dimension, with what to do beside it. */
+/** A cloud over the figure that is wrong, or over the whole length, with what to do beside it. */
 export function FaultCloud({
   fault,
   frame,
@@ -16,22 +19,22 @@ export function FaultCloud({
   frame: Frame;
   layout: ElevationLayout;
 }) {
-  const width = Math.max(120, textWidth(fault.text, 13.5, 600) + 50);
-  const x = (frame.x0 + frame.x1) / 2;
-  const y = (layout.dimensions.at(-1)?.y ?? layout.height) - 6;
-  const right = x + width / 2;
-  const beside = right + 60 + textWidth(fault.advice, 14, 600) < frame.width;
+  const half = Math.max(60, textWidth(fault.text, 13.5, 600) / 2 + 25);
+  const figure = layout.figures.find(({ edits }) => edits !== undefined && edits === fault.place);
+  const middle = figure?.x ?? (frame.x0 + frame.x1) / 2;
+  const x = Math.max(half + 4, Math.min(frame.width - half - 4, middle));
+  const y = figure ? figure.y + 4 : (layout.dimensions.at(-1)?.y ?? layout.height) - 6;
+  const isBeside = x + half + 8 + textWidth(fault.advice, 14, 600) < frame.width;
   return (
     <>
-      <path className="cloud paper" d={cloudPath(x - width / 2, y - 26, width, 44)} />
+      <path className="cloud paper" d={cloudPath(x - half, y - 26, 2 * half, 44)} />
       <text x={x} y={y + 1} textAnchor="middle" className="error-text">
         {fault.text}
       </text>
-      {beside && <path className="error-leader" d={`M${right + 6} ${y - 8}L${right + 46} ${y - 22}`} />}
       <text
-        x={beside ? right + 52 : x}
-        y={beside ? y - 20 : y - 44}
-        textAnchor={beside ? 'start' : 'middle'}
+        x={isBeside ? x + half + 8 : x}
+        y={isBeside ? y + 1 : y - 32}
+        textAnchor={isBeside ? 'start' : 'middle'}
         className="error-text"
       >
         {fault.advice}

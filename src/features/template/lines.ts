@@ -56,7 +56,7 @@ export function toRuleLines(
     const outcome = outcomes.find((one) => one.id === id);
     if (!outcome) return [];
     const { state, shown: value } = outcome;
-    const message = state === 'holds' ? null : outcome.message;
+    const message = state === 'holds' ? null : outcome.message.replace(`: ${title}`, '.');
     const figure =
       shown && value !== undefined
         ? { tex: shown.tex, text: figureText(value, dimensionOf(shown.expression.tree, kinds), system) }

@@ -21,6 +21,10 @@ export function stepTex({ symbols, numbers }: DerivationStep): string {
 export const isWide = ({ symbols, numbers }: DerivationStep): boolean =>
   Math.max(signsIn(symbols), signsIn(numbers)) > LINE / 2;
 
+/** Whether a line of it does not fit beside the result, which then stands below. */
+export const isLong = ({ symbols, numbers }: DerivationStep): boolean =>
+  Math.max(signsIn(symbols), signsIn(numbers)) > LINE;
+
 /** About as many signs as the formula is wide: a fraction is as wide as the longer of its halves. */
 const signsIn = (tex: string): number =>
   plain(

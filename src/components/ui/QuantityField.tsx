@@ -44,7 +44,9 @@ export function QuantityField(props: QuantityFieldProps) {
     event.currentTarget.blur();
   };
   return (
-    <div className={`min-w-0 px-14 pt-8 pb-9 ${error ? 'bg-error-wash' : ''}`}>
+    <div
+      className={`min-w-0 px-14 pt-8 pb-9 max-md:grid max-md:grid-cols-[minmax(0,1fr)_minmax(0,168px)] max-md:items-center max-md:gap-x-10 ${error ? 'bg-error-wash' : ''}`}
+    >
       <div className="flex items-baseline gap-7 text-schedule text-ink-2">
         <label htmlFor={id} className="min-w-0">
           {symbol && <i className="mr-4 text-[1rem] font-semibold text-ink">{symbol}</i>} {label}
@@ -82,7 +84,9 @@ export function QuantityField(props: QuantityFieldProps) {
           onPick={(unit) => set(changeUnit(entry, unit, dimension))}
         />
       </div>
-      <QuantityBelow {...props} id={`${id}-note`} reading={reading} error={error} set={set} />
+      <div className="max-md:col-span-2">
+        <QuantityBelow {...props} id={`${id}-note`} reading={reading} error={error} set={set} />
+      </div>
     </div>
   );
 }

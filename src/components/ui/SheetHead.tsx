@@ -32,10 +32,10 @@ export function SheetHead({ trail = [], reference, title, facts = [], children }
           {facts.map(({ label, value }) => (
             <div
               key={label}
-              className="border-l border-rule px-18 last:pr-0 max-md:px-12 max-md:first:border-l-0 max-md:first:pl-0"
+              className="border-l border-rule px-18 last:pr-0 max-md:px-10 max-md:first:border-l-0 max-md:first:pl-0"
             >
               <dt className="caps">{label}</dt>
-              <dd className="text-zone leading-20">{value}</dd>
+              <dd className="text-zone leading-20 max-md:text-schedule">{value}</dd>
             </div>
           ))}
         </dl>

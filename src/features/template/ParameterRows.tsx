@@ -38,7 +38,9 @@ export function ParameterRows({ parameter, rows, system, faults, groups, onChang
         {rows.map((row, index) => (
           // biome-ignore lint/suspicious/noArrayIndexKey: a row has no identity but its place
           <li key={index} className="flex flex-wrap items-start gap-10">
-            <span className="min-w-18 pt-7 text-right text-schedule text-ink-2">{index + 1}</span>
+            <span className="min-w-18 pt-7 text-right text-schedule text-ink-2 max-md:w-full max-md:pt-4 max-md:text-left">
+              {index + 1}
+            </span>
             {columns.map((column) => (
               <Cell
                 key={column.symbol}
@@ -50,14 +52,16 @@ export function ParameterRows({ parameter, rows, system, faults, groups, onChang
                 onChange={(cell) => put(index, column.symbol, cell)}
               />
             ))}
-            <Button
-              tone="text"
-              aria-label={`Remove row ${index + 1} of ${name}`}
-              onClick={() => onChange(rows.filter((_, at) => at !== index))}
-              reason={rows.length <= least ? 'One row is needed.' : undefined}
-            >
-              Remove
-            </Button>
+            <span className="flex min-h-34 items-center">
+              <Button
+                tone="text"
+                aria-label={`Remove row ${index + 1} of ${name}`}
+                onClick={() => onChange(rows.filter((_, at) => at !== index))}
+                reason={rows.length <= least ? 'One row is needed.' : undefined}
+              >
+                Remove
+              </Button>
+            </span>
             <FieldNote id={`${id}-${index}`} error={faults.get(`${symbol}/${index}`)} />
           </li>
         ))}

@@ -1,7 +1,5 @@
 import { expect, type Page, test } from '@playwright/test';
-
-/** The demo's engineer of Q-2417 and its password, as the sign-in page offers them. */
-const ENGINEER = { email: 'tomasz.brindle@quillmere.example', password: 'beams-for-everyone' };
+import { ENGINEER } from './support/person';
 
 async function signIn(page: Page): Promise<void> {
   await page.goto('/sign-in');

@@ -1,4 +1,5 @@
 import { expect, type Page, test } from '@playwright/test';
+import { enter } from './support/person';
 
 /** The demo's hall canopy: a propped cantilever with overhang, with a section and criteria. */
 const SHEET = '/jobs/Q-2417/members/LF4/sheet';
@@ -7,13 +8,7 @@ const PAPERS = [
   { paper: 'letter', width: 612, height: 792 },
 ] as const;
 
-test.beforeEach(async ({ page, baseURL }) => {
-  const answer = await page.request.post('/api/v1/session', {
-    data: { email: 'tomasz.brindle@quillmere.example', password: 'beams-for-everyone' },
-    headers: { origin: new URL(baseURL ?? '').origin },
-  });
-  expect(answer.status()).toBe(200);
-});
+test.beforeEach(({ page, baseURL }) => enter(page, baseURL));
 
 async function openSheet(page: Page, paper: string): Promise<number> {
   await page.goto(`${SHEET}?paper=${paper}`);

@@ -1,7 +1,7 @@
 import { RichHtml } from '@/components/drawing/marks/RichHtml';
 import { unitText } from '@/engine/quantity';
-import { Formula } from './Formula';
-import { isLong, isWide, type WorkedSteps } from './worked';
+import { WideFormula } from './WideFormula';
+import { isLong, type WorkedSteps } from './worked';
 
 /** The worked steps, numbered; the one that finds the redundant is washed. */
 export function Derivation({ steps, formulas }: WorkedSteps) {
@@ -19,12 +19,11 @@ export function Derivation({ steps, formulas }: WorkedSteps) {
             <span className={`col-span-2 text-schedule max-md:col-span-1 ${key ? '' : 'text-ink-2'}`}>
               <RichHtml text={title} />
             </span>
-            <div
-              {...scroll(step)}
+            <WideFormula
+              html={formulas[index] ?? ''}
+              title={title}
               className={`col-start-2 min-w-0 overflow-x-auto overflow-y-hidden py-1 ${isLong(step) ? 'col-span-2 [&_.katex]:text-[0.95em]!' : '[&_.katex]:text-[1.06em]!'} max-md:col-span-2 max-md:col-start-1 [&_.katex-display]:m-0! [&_.katex-display]:text-left! [&_.katex-display>.katex]:text-left!`}
-            >
-              <Formula html={formulas[index] ?? ''} />
-            </div>
+            />
             {display !== '' && (
               <span
                 className={`col-start-3 text-right font-semibold whitespace-nowrap max-md:col-span-2 max-md:col-start-1 ${key ? 'text-[1.1875rem]' : 'text-[1rem]'}`}
@@ -44,7 +43,3 @@ export function Derivation({ steps, formulas }: WorkedSteps) {
     </ol>
   );
 }
-
-/** What can be moved sideways can have the focus, so that the arrow keys move it. */
-const scroll = (step: WorkedSteps['steps'][number]) =>
-  isWide(step) ? { tabIndex: 0, role: 'group', 'aria-label': `Formula: ${step.title}` } : {};

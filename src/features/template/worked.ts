@@ -17,10 +17,6 @@ export function stepTex({ symbols, numbers }: DerivationStep): string {
     : `${symbols} = ${numbers}`;
 }
 
-/** Whether a formula may be wider than its place even on two lines, and must be moved sideways to be read. */
-export const isWide = ({ symbols, numbers }: DerivationStep): boolean =>
-  Math.max(signsIn(symbols), signsIn(numbers)) > LINE / 2;
-
 /** Whether a line of it does not fit beside the result, which then stands below. */
 export const isLong = ({ symbols, numbers }: DerivationStep): boolean =>
   Math.max(signsIn(symbols), signsIn(numbers)) > LINE;

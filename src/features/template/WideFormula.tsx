@@ -1,0 +1,30 @@
+import { useLayoutEffect, useRef, useState } from 'react';
+import { Formula } from './Formula';
+
+interface WideFormulaProps {
+  readonly html: string;
+  /** What the formula works out, in words. */
+  readonly title: string;
+  readonly className: string;
+}
+
+/** A formula that may be wider than its place: then it can have the focus, so that the arrow keys move it sideways. */
+export function WideFormula({ html, title, className }: WideFormulaProps) {
+  const place = useRef<HTMLDivElement>(null);
+  const [isWide, setWide] = useState(false);
+  useLayoutEffect(() => {
+    const { current } = place;
+    if (!current) return;
+    const measure = () => setWide(current.scrollWidth > current.clientWidth);
+    const observer = new ResizeObserver(measure);
+    observer.observe(current);
+    for (const child of current.children) observer.observe(child);
+    return () => observer.disconnect();
+  }, []);
+  const focus = isWide ? { tabIndex: 0, role: 'group', 'aria-label': `Formula: ${title}` } : {};
+  return (
+    <div ref={place} {...focus} className={className}>
+      <Formula html={html} className="inline-block" />
+    </div>
+  );
+}

@@ -1,8 +1,21 @@
-import { describe, expect, it } from 'vitest';
-import { saidAndAdvice, toDrawingFault } from './faults';
+import { describe, expect, test } from 'vitest';
+import { readParameters } from '@/engine/template';
+import { shippedTemplate } from '../../../tests/support/templates';
+import { saidAndAdvice, toCauses, toDrawingFault } from './faults';
+
+const canopy = shippedTemplate('propped-cantilever-overhang-uniform');
+const causesOf = (given: Record<string, string>) => {
+  const read = readParameters(canopy, given);
+  if (read.ok) return [];
+  const faults = read.faults.map(({ path, ...fault }) => ({
+    ...fault,
+    pointer: ['/parameters', ...path].join('/'),
+  }));
+  return toCauses(canopy, faults);
+};
 
 describe('what a fault says', () => {
-  it('comes apart after its first sentence, not at a decimal point', () => {
+  test('comes apart after its first sentence, not at a decimal point', () => {
     expect(saidAndAdvice('Span is 0.1 m. Give 0.3 m to 30 m.')).toEqual([
       'Span is 0.1 m',
       'Give 0.3 m to 30 m.',
@@ -12,25 +25,16 @@ describe('what a fault says', () => {
 });
 
 describe('the cloud on the drawing', () => {
-  const base = { kind: 'quantity', default: {}, min: {}, max: {} };
-  const template = {
-    parameters: [
-      { ...base, symbol: 'w', tex: 'w', name: 'Uniform load', dimension: 'line_load' },
-      { ...base, symbol: 'a', tex: 'a', name: 'Overhang', dimension: 'length' },
-    ],
-  } as unknown as Parameters<typeof toDrawingFault>[0];
-  const load = { symbol: 'w', title: 'Uniform load', message: 'Uniform load is 900 kN/m. Give less.' };
-  const length = { symbol: 'a', title: 'Overhang', message: 'Overhang is 40 m. Give 0 m to 15 m.' };
-
-  it('is over the first length that is wrong', () => {
-    expect(toDrawingFault(template, [load, length])).toEqual({
+  test('is over the first length that is wrong', () => {
+    expect(toDrawingFault(canopy, causesOf({ w: '900 kN/m', a: '40 m' }))).toEqual({
       text: 'Overhang is 40 m',
       advice: 'Give 0 m to 15 m.',
       place: 'a',
     });
   });
 
-  it('is left out where no length is wrong', () => {
-    expect(toDrawingFault(template, [load])).toBeUndefined();
+  test('is left out where no length is wrong', () => {
+    expect(causesOf({ w: '900 kN/m' })).toHaveLength(1);
+    expect(toDrawingFault(canopy, causesOf({ w: '900 kN/m' }))).toBeUndefined();
   });
 });

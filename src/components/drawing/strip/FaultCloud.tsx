@@ -24,21 +24,19 @@ export function FaultCloud({
   const middle = figure?.x ?? (frame.x0 + frame.x1) / 2;
   const x = Math.max(half + 4, Math.min(frame.width - half - 4, middle));
   const y = figure ? figure.y + 4 : (layout.dimensions.at(-1)?.y ?? layout.height) - 6;
-  const isBeside = x + half + 8 + textWidth(fault.advice, 14, 600) < frame.width;
+  // A phone has the room for the advice only in the list under the drawing.
+  const isAdvised = frame.mode !== 'phone' && x + half + 8 + textWidth(fault.advice, 14, 600) < frame.width;
   return (
     <>
       <path className="cloud paper" d={cloudPath(x - half, y - 26, 2 * half, 44)} />
       <text x={x} y={y + 1} textAnchor="middle" className="error-text">
         {fault.text}
       </text>
-      <text
-        x={isBeside ? x + half + 8 : x}
-        y={isBeside ? y + 1 : y - 32}
-        textAnchor={isBeside ? 'start' : 'middle'}
-        className="error-text"
-      >
-        {fault.advice}
-      </text>
+      {isAdvised && (
+        <text x={x + half + 8} y={y + 1} className="error-text">
+          {fault.advice}
+        </text>
+      )}
     </>
   );
 }

@@ -91,7 +91,7 @@ interface RequirementsProps extends Pick<SectionFiltersProps, 'state' | 'system'
 function Requirements({ state, system, onBound, onState }: RequirementsProps) {
   const axes = axesOf(system);
   return (
-    <div className="min-w-0 border-rule px-18 pt-14 pb-12 max-lg:border-t lg:border-l max-md:px-12">
+    <div className="min-w-0 border-rule px-18 pt-14 pb-12 max-lg:border-t lg:border-l max-md:px-12 md:max-lg:nth-2:border-t-0 md:max-lg:nth-[even]:border-l">
       <h2 className="caps mb-8">Also require</h2>
       <div className="grid grid-cols-[minmax(0,1fr)_72px_40px] items-center gap-x-8 gap-y-5 text-schedule">
         {REQUIRED.map(({ name, field, words, end }) => (

@@ -1,4 +1,4 @@
-import { useMemo } from 'react';
+import { type ComponentProps, memo, useMemo } from 'react';
 import { ElevationStrip, type ElevationStripProps } from '@/components/drawing/ElevationStrip';
 import { DRAWING_FORMATS } from '@/components/drawing/quantity-format';
 import { StationTable } from '@/components/drawing/StationTable';
@@ -7,6 +7,7 @@ import type { Beam } from '@/engine/model';
 import type { UnitSystemName } from '@/engine/quantity';
 import type { Instance } from '@/engine/template';
 import { drawnName } from './names';
+import { useRestedValue } from './use-live';
 
 type Named = Pick<Instance, 'dimensions' | 'loadNames'>;
 
@@ -53,11 +54,19 @@ export function BeamResults({
       />
       {solution && (
         <div className="px-(--pad) pb-10">
-          <StationTable beam={beam} solution={solution} envelopes={more.envelopes} format={format} />
+          <RestedTable beam={beam} solution={solution} envelopes={more.envelopes} format={format} />
         </div>
       )}
     </>
   );
+}
+
+const Table = memo(StationTable);
+
+/** Nobody reads a table while a value is dragged: it follows when the hand rests, and the frame is the drawing's. */
+function RestedTable({ beam, solution, envelopes, format }: ComponentProps<typeof StationTable>) {
+  const stated = useMemo(() => ({ beam, solution, envelopes, format }), [beam, solution, envelopes, format]);
+  return <Table {...useRestedValue(stated)} />;
 }
 
 const symbolsOf = ({ dimensions, loadNames }: Named) => ({

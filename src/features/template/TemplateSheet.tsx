@@ -1,4 +1,4 @@
-import { useMemo } from 'react';
+import { memo } from 'react';
 import type { BlockAction } from '@/components/ui/BlockActions';
 import { TitleBlock } from '@/components/ui/TitleBlock';
 import { TitleStrip } from '@/components/ui/TitleStrip';
@@ -7,6 +7,7 @@ import { ZoneHeading } from '@/components/ui/ZoneHeading';
 import { paths } from '@/paths';
 import { BeamResults } from './BeamResults';
 import { Causes } from './Causes';
+import type { TemplateEvaluation } from './evaluate';
 import { ForceMethod } from './ForceMethod';
 import { fieldFaults, toCauses, toDrawingFault } from './faults';
 import { toResultLines, toRuleLines } from './lines';
@@ -123,11 +124,8 @@ function ElevationZone({ data, page }: ZoneProps) {
 }
 
 function LowerZones({ data, page, action }: ZoneProps & { readonly action: BlockAction }) {
-  const { template, system, formulas, row } = data;
   const { evaluation } = page.good;
   const rested = useRestedValue(evaluation);
-  const rules = useMemo(() => toRuleLines(template, rested.rules, system), [template, rested, system]);
-  const results = useMemo(() => toResultLines(template, rested.instance, system), [template, rested, system]);
   const note = page.outcome.ok ? undefined : 'At the last good values';
   return (
     <div className="grid flex-1 border-t border-ink md:grid-cols-[minmax(0,1fr)_var(--title-column)] lg:grid-cols-[minmax(0,724fr)_minmax(0,312fr)_var(--title-column)]">
@@ -140,27 +138,9 @@ function LowerZones({ data, page, action }: ZoneProps & { readonly action: Block
           note={note}
         />
       </section>
-      <div className="min-w-0 border-ink max-md:border-t lg:border-l">
-        <Zone letter="E" title="Validity" note={note}>
-          <Validity rules={rules} formulas={formulas} />
-        </Zone>
-        <Zone letter="F" title="Proof cases" note={proofNote(data.proof)}>
-          <ProofCases cases={data.proof} />
-          <p className="mt-8 text-note text-ink-2 italic">
-            Run again for this page, on engine {data.engineNow}. Revision {row.revision} was written on engine{' '}
-            {data.engineVersion}.
-          </p>
-        </Zone>
-        {results.length > 0 && (
-          <Zone letter="H" title="Closed forms" note={note}>
-            <ClosedForms results={results} formulas={formulas} />
-          </Zone>
-        )}
-      </div>
+      <RulesAndProof data={data} rested={rested} note={note} />
       <aside className="flex min-w-0 flex-col border-ink max-md:border-t md:border-l">
-        <Zone letter="G" title="Notes">
-          <Notes template={template} />
-        </Zone>
+        <Guidance template={data.template} />
         <div className="mt-auto">
           <Block data={data} action={action} />
         </div>
@@ -168,6 +148,47 @@ function LowerZones({ data, page, action }: ZoneProps & { readonly action: Block
     </div>
   );
 }
+
+interface RulesProps {
+  readonly data: TemplatePageData;
+  /** The last good evaluation, when the hand has rested. */
+  readonly rested: TemplateEvaluation;
+  readonly note: string | undefined;
+}
+
+/** What is said of the values, and of the template. */
+const RulesAndProof = memo(function RulesAndProof({ data, rested, note }: RulesProps) {
+  const { template, system, formulas, row } = data;
+  const rules = toRuleLines(template, rested.rules, system);
+  const results = toResultLines(template, rested.instance, system);
+  return (
+    <div className="min-w-0 border-ink max-md:border-t lg:border-l">
+      <Zone letter="E" title="Validity" note={note}>
+        <Validity rules={rules} formulas={formulas} />
+      </Zone>
+      <Zone letter="F" title="Proof cases" note={proofNote(data.proof)}>
+        <ProofCases cases={data.proof} />
+        <p className="mt-8 text-note text-ink-2 italic">
+          Run again for this page, on engine {data.engineNow}. Revision {row.revision} was written on engine{' '}
+          {data.engineVersion}.
+        </p>
+      </Zone>
+      {results.length > 0 && (
+        <Zone letter="H" title="Closed forms" note={note}>
+          <ClosedForms results={results} formulas={formulas} />
+        </Zone>
+      )}
+    </div>
+  );
+});
+
+const Guidance = memo(function Guidance({ template }: Pick<TemplatePageData, 'template'>) {
+  return (
+    <Zone letter="G" title="Notes">
+      <Notes template={template} />
+    </Zone>
+  );
+});
 
 function Block({ data, action }: { readonly data: TemplatePageData; readonly action: BlockAction }) {
   const { row } = data;

@@ -27,8 +27,8 @@ describe('what a fault says', () => {
 describe('the cloud on the drawing', () => {
   test('is over the first length that is wrong', () => {
     expect(toDrawingFault(canopy, causesOf({ w: '900 kN/m', a: '40 m' }))).toEqual({
-      text: 'Overhang is 40 m',
-      advice: 'Give 0 m to 15 m.',
+      text: 'Overhang is 40\u00a0m',
+      advice: 'Give 0\u00a0m to 15\u00a0m.',
       place: 'a',
     });
   });

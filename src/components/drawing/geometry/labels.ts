@@ -51,6 +51,9 @@ const inside = (box: Box, bounds: Box): boolean =>
 
 /** Whether the segment a–b enters the box: clipped by each edge in turn (Liang and Barsky). */
 function enters([ax, ay]: Point, [bx, by]: Point, box: Box): boolean {
+  // Most pieces of a curve are nowhere near: they are left before anything is allocated.
+  if ((ax < box.left && bx < box.left) || (ax > box.right && bx > box.right)) return false;
+  if ((ay < box.top && by < box.top) || (ay > box.bottom && by > box.bottom)) return false;
   let from = 0;
   let to = 1;
   const [dx, dy] = [bx - ax, by - ay];

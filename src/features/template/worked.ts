@@ -10,27 +10,16 @@ export interface WorkedSteps {
 const LINE = 46;
 
 /** A step's formula: what it says in letters, then in numbers, on a line of their own where they are long. */
-export function stepTex(step: DerivationStep): string {
-  const { symbols, numbers } = step;
+export function stepTex({ symbols, numbers }: DerivationStep): string {
   if (numbers === '') return symbols;
-  return isBroken(step)
+  return signsIn(symbols) + signsIn(numbers) > LINE
     ? `\\begin{aligned}&${symbols}\\\\[2pt]&\\quad=${numbers}\\end{aligned}`
     : `${symbols} = ${numbers}`;
 }
 
-const isBroken = ({ symbols, numbers }: DerivationStep): boolean =>
-  numbers !== '' && signsIn(symbols) + signsIn(numbers) > LINE;
-
-const longestLine = (step: DerivationStep): number => {
-  const [symbols, numbers] = [signsIn(step.symbols), signsIn(step.numbers)];
-  return isBroken(step) ? Math.max(symbols, numbers) : symbols + numbers;
-};
-
-/** Whether a formula may be wider than a phone, and must be moved sideways there to be read. */
-export const isWide = (step: DerivationStep): boolean => longestLine(step) > LINE / 2;
-
 /** Whether a line of it does not fit beside the result, which then stands below. */
-export const isLong = (step: DerivationStep): boolean => longestLine(step) > LINE;
+export const isLong = ({ symbols, numbers }: DerivationStep): boolean =>
+  Math.max(signsIn(symbols), signsIn(numbers)) > LINE;
 
 /** About as many signs as the formula is wide: a fraction is as wide as the longer of its halves. */
 const signsIn = (tex: string): number =>

@@ -110,7 +110,7 @@ function Cell({ column, place, cell, groups, error, onChange }: CellProps) {
   const reading = readQuantity(cell.text, column.dimension, { unit: cell.unit });
   const wrong = reading.ok ? error : reading.message;
   return (
-    <div className="w-150 max-md:w-full">
+    <div className="w-150 max-md:min-w-120 max-md:flex-1">
       <div className="flex items-baseline border-b-[1.5px] border-ink bg-field focus-within:outline-2 focus-within:outline-ochre">
         <i className="pl-6 font-semibold">{column.symbol}</i>
         <input

@@ -60,8 +60,8 @@ function useCatalogueKeys(move: (steps: number) => void, selected: CatalogueCard
   const down = () => step(1);
   const up = () => step(-1);
   const open = ({ target }: KeyboardEvent) => {
-    // A link or a button that has the focus does its own work.
-    const own = target instanceof Element ? target.closest<HTMLElement>('a, button') : null;
+    // What is pressed and has the focus does its own work.
+    const own = target instanceof Element ? target.closest<HTMLElement>('a, button, summary') : null;
     if (own) own.click();
     else if (selected) location.assign(paths.template(selected.row.slug));
   };

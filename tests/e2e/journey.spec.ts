@@ -59,6 +59,8 @@ test('from the catalogue to a calc sheet: a propped cantilever with an overhang'
     await page.getByLabel('Checked by').selectOption({ index: 1 });
     await page.getByRole('button', { name: 'Place it in the job' }).click();
     await expect(page.getByRole('heading', { name: 'Canopy over the side door', level: 1 })).toBeVisible();
+    await expect(page.getByText('evaluated by the server')).toBeVisible();
+    await expect(page.getByText('Changed here, not saved yet.')).toHaveCount(0);
   });
 
   await test.step('a section is chosen by depth and mass', async () => {

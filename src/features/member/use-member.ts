@@ -13,6 +13,7 @@ import {
   type Draft,
   differencesOf,
   type HistoryLine,
+  inFields,
   toBody,
   toDraft,
   toInputs,
@@ -29,7 +30,8 @@ export type SaveState =
 /** The member's draft, what it comes to, and its saving. */
 export function useMember(data: WorkspaceData) {
   const { template, job } = data;
-  const [member, setMember] = useState(data.member);
+  const read = (saved: MemberView) => inFields(saved, template, job.unitSystem);
+  const [member, setMember] = useState(() => read(data.member));
   const [draft, setDraft] = useState<Draft>(() =>
     toDraft(data.member, template, data.section, job.unitSystem),
   );
@@ -55,14 +57,15 @@ export function useMember(data: WorkspaceData) {
     setSaving({ kind: 'saving' });
     const outcome = await putMember(job.number, member.mark, over, sent);
     if (outcome.kind !== 'saved') {
-      setSaving(outcome);
+      setSaving(outcome.kind === 'stale' ? { ...outcome, current: read(outcome.current) } : outcome);
       return null;
     }
     const { result } = outcome.member;
     const { evaluation } = live;
     const isSame = evaluation !== null && result !== null && sameFigures(toStoredResult(evaluation), result);
-    setMember(outcome.member);
-    setHistory([savedLine(member, outcome.member), ...history]);
+    const saved = read(outcome.member);
+    setMember(saved);
+    setHistory([savedLine(member, saved), ...history]);
     setSaving({ kind: 'saved', isSame });
     return outcome.member;
   }

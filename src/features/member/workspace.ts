@@ -71,6 +71,12 @@ export const toDraft = (
   redundants: member.redundants,
 });
 
+/** The member with its parameters as its fields write them, a load by its groups, so that only a change is a difference. */
+export const inFields = (member: MemberView, template: Template, system: UnitSystemName): MemberView => ({
+  ...member,
+  parameters: toParameters(template, toRaw(template, member.parameters, { system, byGroup: true })),
+});
+
 type Status = { readonly status: SaveMember['status']; readonly reason: string };
 
 /** The draft as it is sent. */

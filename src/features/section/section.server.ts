@@ -14,6 +14,7 @@ import {
   type LibraryRevision,
 } from '@/features/review/library.server';
 import { notFound } from '@/lib/app-error';
+import { initialsOf } from '@/lib/initials';
 import { type EditionView, editionDocument, type SectionDetail } from './edition';
 import type { SectionPlace, SectionQuery } from './query';
 import { type Found, searchRows, selectRows, toItem } from './search.server';
@@ -84,8 +85,8 @@ const toEditionView = (found: LibraryRevision, history: readonly LibraryRevision
   history: history.map((one) => ({
     edition: one.number,
     date: DAY.format(one.date),
-    by: one.author,
-    checked: one.reviewer,
+    by: initialsOf(one.author),
+    checked: one.reviewer && initialsOf(one.reviewer),
     change: one.changeNote,
   })),
 });

@@ -7,6 +7,7 @@ import { ENGINE_VERSION } from '@/engine/version';
 import { may, type Person } from '@/features/account/permission';
 import { chooseSection } from '@/features/section/choose.server';
 import { AppError } from '@/lib/app-error';
+import { initialsOf } from '@/lib/initials';
 import { OWN_STIFFNESS, readStiffness, readValues, type Stiffness } from './address';
 import { derivationOf } from './answer';
 import { type CatalogueData, sendCard } from './catalogue-card';
@@ -63,12 +64,6 @@ const toHistoryLine = (line: TemplateRead['history'][number]): HistoryLine => ({
   checked: line.reviewer === null ? undefined : initialsOf(line.reviewer),
   change: line.changeNote,
 });
-
-const initialsOf = (name: string): string =>
-  name
-    .split(/\s+/)
-    .map((word) => word.charAt(0))
-    .join('');
 
 async function sectionOf(
   viewer: Viewer,

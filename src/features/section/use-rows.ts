@@ -3,7 +3,9 @@ import { useEffect, useRef, useState } from 'react';
 
 const ROW = { wide: 28, phone: 58 };
 const HEAD = 62;
-const FIRST_PAINT = { width: 1200, height: 426 };
+/** Of the schedule, as section-table.css holds it. */
+const HEIGHT = { least: 146, most: 426 };
+const FIRST_PAINT = { width: 1200, height: HEIGHT.most };
 
 function useIsPhone(): boolean {
   const [isPhone, setIsPhone] = useState(false);
@@ -33,7 +35,8 @@ export function useRows(count: number) {
   });
   // biome-ignore lint/correctness/useExhaustiveDependencies: another height of row measures anew
   useEffect(() => virtualizer.measure(), [row]);
-  const height = virtualizer.scrollRect?.height ?? FIRST_PAINT.height;
+  // Not measured: the rule beside it is drawn to this height, and would hold the schedule open.
+  const height = Math.max(HEIGHT.least, Math.min(HEIGHT.most, head + count * row));
   const first = Math.min(Math.round((virtualizer.scrollOffset ?? 0) / row), Math.max(0, count - 1));
   const size = Math.max(1, Math.floor((height - head) / row));
   const drawn = virtualizer.getVirtualItems();

@@ -36,7 +36,7 @@ export function QuantityBelow({
       </>
     ) : undefined);
   return (
-    <>
+    <div className="max-md:col-span-2">
       {range && !locked && !error && (
         <RangeLine
           range={range}
@@ -62,7 +62,7 @@ export function QuantityBelow({
           ))}
         </div>
       )}
-    </>
+    </div>
   );
 }
 

@@ -84,9 +84,7 @@ export function QuantityField(props: QuantityFieldProps) {
           onPick={(unit) => set(changeUnit(entry, unit, dimension))}
         />
       </div>
-      <div className="max-md:col-span-2">
-        <QuantityBelow {...props} id={`${id}-note`} reading={reading} error={error} set={set} />
-      </div>
+      <QuantityBelow {...props} id={`${id}-note`} reading={reading} error={error} set={set} />
     </div>
   );
 }

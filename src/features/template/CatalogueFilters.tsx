@@ -39,9 +39,6 @@ export function CatalogueFilters(props: FiltersProps) {
   const allTags = [...new Set(props.cards.flatMap(({ row }) => row.tags))].sort(
     (a, b) => tags(b, b).count - tags(a, a).count || a.localeCompare(b),
   );
-  // A filter that is on is never folded away.
-  const isFirst = (tag: string, at: number) => at < FIRST_TAGS || props.query.tags.includes(tag);
-  const more = allTags.filter((tag, at) => !isFirst(tag, at));
   return (
     <nav
       aria-label="Filters"
@@ -67,21 +64,33 @@ export function CatalogueFilters(props: FiltersProps) {
         ))}
       </Group>
       <Group title="Tag">
-        {allTags.filter(isFirst).map((value) => (
-          <Ticked key={value} {...tags(value, value)} />
-        ))}
-        {more.length > 0 && (
-          <details>
-            <summary className="link min-h-26 py-4 text-schedule pointer-coarse:py-13">
-              {more.length} more {more.length === 1 ? 'tag' : 'tags'}
-            </summary>
-            {more.map((value) => (
-              <Ticked key={value} {...tags(value, value)} />
-            ))}
-          </details>
-        )}
+        <Tags all={allTags.map((tag) => tags(tag, tag))} />
       </Group>
     </nav>
+  );
+}
+
+/** The first tags, and the others folded. */
+function Tags({ all }: { readonly all: readonly OneProps[] }) {
+  // A filter that is on is never folded away.
+  const isFirst = ({ query, value }: OneProps, at: number) => at < FIRST_TAGS || query.tags.includes(value);
+  const more = all.filter((tag, at) => !isFirst(tag, at));
+  return (
+    <>
+      {all.filter(isFirst).map((tag) => (
+        <Ticked key={tag.value} {...tag} />
+      ))}
+      {more.length > 0 && (
+        <details>
+          <summary className="link min-h-26 py-4 text-schedule pointer-coarse:py-13">
+            {more.length} more {more.length === 1 ? 'tag' : 'tags'}
+          </summary>
+          {more.map((tag) => (
+            <Ticked key={tag.value} {...tag} />
+          ))}
+        </details>
+      )}
+    </>
   );
 }
 

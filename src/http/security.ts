@@ -23,10 +23,12 @@ export function secure(response: Response, https: boolean): Response {
   for (const [name, value] of Object.entries(HEADERS)) headers.set(name, value);
   if (https) headers.set('Strict-Transport-Security', 'max-age=31536000; includeSubDomains');
   const policy = headers.get(CSP);
-  if (policy) headers.set(CSP, `${policy.replace(/;?\s*$/, ';')} ${ADDED}`);
+  // A page that says why another was refused is rendered within its request, and passes here twice.
+  if (policy && !policy.includes(ADDED)) headers.set(CSP, `${policy.replace(/;?\s*$/, ';')} ${ADDED}`);
   // Astro puts its 404 page in place of an empty answer and keeps the headers that the answer had. The development
   // server gives pages no policy: it inlines its scripts, and without a policy they run.
-  else if (response.body !== null && !(import.meta.env.DEV && isPage(headers))) headers.set(CSP, INERT);
+  else if (!policy && response.body !== null && !(import.meta.env.DEV && isPage(headers)))
+    headers.set(CSP, INERT);
   if (isPage(headers)) {
     headers.set('Content-Type', 'text/html; charset=utf-8');
     // A page shows what its reader may see: it is kept by their browser for Back, and by nobody else.

@@ -101,6 +101,9 @@ type ElevationOptions = {
   moves: boolean;
 };
 
+/** Height of the plumb line's reading in the corner. */
+const READING = 46;
+
 export function layElevation(
   beam: Beam,
   frame: Frame,
@@ -111,7 +114,9 @@ export function layElevation(
   const tall = drawnDepth(depth, frame.perMetre, frame.depthMost);
   const wall = 26 * frame.supportScale;
   // A moment's value stands over the member's end, under the heading and the reading.
-  const top = Math.max(loads.height + 14, wall + 28, 84 - tall / 2);
+  // A load's figure beyond the beam's end stands clear of the plumb line's reading, which is in the same corner.
+  const isBeside = frame.mode === 'screen' && loads.figures.some(({ x }) => x > xOf(frame, beam.length));
+  const top = Math.max(loads.height + (isBeside ? READING : 14), wall + 28, 84 - tall / 2);
   const bottom = top + tall;
   const first = bottom + roomBelow(beam) + (moves ? MECHANISM_REACH : 0) - (frame.mode === 'screen' ? 0 : 6);
   const dimensions = layDimensions(beam, symbols.lengths ?? [], frame, format, first);

@@ -1,4 +1,4 @@
-import type { ReactNode } from 'react';
+import { memo, type ReactNode } from 'react';
 import { ChoiceField } from '@/components/ui/Field';
 import type { UnitSystemName } from '@/engine/quantity';
 import type { Parameter, Template } from '@/engine/template';
@@ -32,7 +32,18 @@ export function ParameterFields(props: ParameterFieldsProps) {
       <div className="grid overflow-hidden max-md:grid-cols-1 md:grid-cols-4 lg:grid-cols-[repeat(auto-fit,minmax(180px,1fr))] [&>*]:-ml-px [&>*]:border-t [&>*]:border-l [&>*]:border-t-rule [&>*]:border-l-rule">
         {parameters.map(
           (parameter) =>
-            parameter.kind !== 'rows' && <OneField key={parameter.symbol} {...props} parameter={parameter} />,
+            parameter.kind !== 'rows' && (
+              <OneField
+                key={parameter.symbol}
+                parameter={parameter}
+                value={props.raw[parameter.symbol]}
+                system={props.system}
+                error={props.faults.get(parameter.symbol)}
+                faults={props.raw[parameter.symbol]?.kind === 'load' ? props.faults : undefined}
+                groups={props.groups}
+                onChange={props.onChange}
+              />
+            ),
         )}
         {props.children}
       </div>
@@ -53,11 +64,21 @@ export function ParameterFields(props: ParameterFieldsProps) {
 
 const rowsIn = (value: RawValue | undefined) => (value?.kind === 'rows' ? value.rows : []);
 
-type OneProps = ParameterFieldsProps & { parameter: Exclude<Parameter, { kind: 'rows' }> };
+interface OneProps extends Pick<ParameterFieldsProps, 'system' | 'onChange'> {
+  readonly parameter: Exclude<Parameter, { kind: 'rows' }>;
+  readonly value: RawValue | undefined;
+  readonly error: string | undefined;
+  /** Of its groups, for a load that is given by them. */
+  readonly faults: FieldFaults | undefined;
+  readonly groups: readonly LoadGroup[] | undefined;
+}
 
-function OneField({ parameter, raw, system, faults, onChange, groups = [] }: OneProps) {
+const NO_FAULTS: FieldFaults = new Map();
+
+/** Kept while another field is dragged: the frame is the drawing's. */
+const OneField = memo(function OneField(props: OneProps) {
+  const { parameter, value, system, error, faults = NO_FAULTS, onChange, groups = [] } = props;
   const { symbol } = parameter;
-  const value = raw[symbol];
   if (value === undefined) return null;
   const set = (next: RawValue) => onChange(symbol, next);
   if (parameter.kind === 'choice') {
@@ -69,7 +90,7 @@ function OneField({ parameter, raw, system, faults, onChange, groups = [] }: One
           label={parameter.name}
           choices={choices}
           value={value.value}
-          error={faults.get(symbol)}
+          error={error}
           help={parameter.help}
           onChange={(event) => set({ kind: 'choice', value: event.target.value })}
         />
@@ -94,9 +115,9 @@ function OneField({ parameter, raw, system, faults, onChange, groups = [] }: One
         parameter={parameter}
         entry={value.entry}
         system={system}
-        error={faults.get(symbol)}
+        error={error}
         onChange={(entry) => set({ kind: 'quantity', entry })}
       />
     </div>
   );
-}
+});

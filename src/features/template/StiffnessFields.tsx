@@ -1,3 +1,4 @@
+import { memo } from 'react';
 import { QuantityField } from '@/components/ui/QuantityField';
 import { formatNumber, toUnit, UNIT_SYSTEMS, type UnitSystemName } from '@/engine/quantity';
 import type { Template } from '@/engine/template';
@@ -5,9 +6,8 @@ import type { PageValues, PickedSection } from './page';
 import { SectionPick } from './SectionPick';
 import { unitsOffered } from './units';
 
-interface StiffnessFieldsProps {
+interface StiffnessFieldsProps extends Pick<PageValues, 'ei' | 'section'> {
   readonly template: Template;
-  readonly values: Pick<PageValues, 'ei' | 'section'>;
   readonly system: UnitSystemName;
   readonly fault: string | undefined;
   readonly sectionFault: string | null;
@@ -15,9 +15,8 @@ interface StiffnessFieldsProps {
 }
 
 /** EI as a number of its own, or from a section: one of the two. */
-export function StiffnessFields(props: StiffnessFieldsProps) {
-  const { template, values, system, fault, sectionFault, onChange } = props;
-  const { section, ei } = values;
+export const StiffnessFields = memo(function StiffnessFields(props: StiffnessFieldsProps) {
+  const { template, ei, section, system, fault, sectionFault, onChange } = props;
   const affects = template.stiffness.affects.join(', ');
   const locked = section ? `from ${section.values.designation}, ${section.materialName}` : undefined;
   const shown = section ? { text: plainNumber(section, ei.unit), unit: ei.unit } : ei;
@@ -44,7 +43,7 @@ export function StiffnessFields(props: StiffnessFieldsProps) {
       />
     </>
   );
-}
+});
 
 const plainNumber = ({ resolved }: PickedSection, unit: string): string =>
   formatNumber(toUnit(resolved.ei, unit), UNIT_SYSTEMS.metric.bending_stiffness);

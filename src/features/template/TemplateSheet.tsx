@@ -77,7 +77,8 @@ function ParametersZone({ data, page }: ZoneProps) {
       >
         <StiffnessFields
           template={template}
-          values={values}
+          ei={values.ei}
+          section={values.section}
           system={system}
           fault={faults.get('ei')}
           sectionFault={data.sectionFault}

@@ -26,7 +26,13 @@ export function checkBeam(template: Template): TemplateFault[] {
     ['to', to, 'length'],
   ];
   return [
-    ...faults([], [['length', beam.length, 'length']]),
+    ...faults(
+      [],
+      [
+        ['length', beam.length, 'length'],
+        ['own_weight', beam.own_weight, 'ratio'],
+      ],
+    ),
     ...beam.supports.flatMap((support, index) => faults(['supports', index], partsOfSupport(support))),
     ...(beam.hinges ?? []).flatMap(({ at, when }, index) =>
       faults(

@@ -9,7 +9,7 @@ import type { Selector, Template } from './document';
 import type { Path } from './measured';
 import { PRINTED } from './proof';
 import { PLACEHOLDER } from './rules';
-import { columnKinds, kindsOf, ruleKinds } from './scope';
+import { columnKinds, figureKinds, kindsOf, ruleKinds } from './scope';
 import { selectorDimension } from './select';
 
 export type { TemplateFault };
@@ -75,6 +75,8 @@ function checkResults(template: Template, kinds: Kinds): TemplateFault[] {
 }
 
 function selectorFaults(template: Template, selector: Selector, kinds: Kinds, path: Path): TemplateFault[] {
+  if ('figure' in selector)
+    return expressionFaults(selector.figure, selector.dimension, figureKinds(template), [...path, 'figure']);
   const places = Object.entries(selector).flatMap(([key, value]) =>
     typeof value === 'object' ? expressionFaults(value, 'length', kinds, [...path, key]) : [],
   );

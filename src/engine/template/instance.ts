@@ -73,7 +73,8 @@ export function instantiate(
   const shares = loadShares(template, values, ei);
   const beam = beamOf(template, scope, options);
   const { selfWeight } = options;
-  const own = selfWeight === undefined ? [] : [ownWeight(selfWeight, beam.length)];
+  const across = template.beam.own_weight ? evaluateNumber(template.beam.own_weight.tree, scope) : 1;
+  const own = selfWeight === undefined ? [] : [ownWeight(selfWeight * across, beam.length)];
   const loads = [...shares.map(loadOf), ...own];
   const stray = firstStray({ ...beam, loads });
   if (stray) return { ok: false, faults: [stray] };

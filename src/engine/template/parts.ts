@@ -125,7 +125,10 @@ export function beamSchema<E extends z.ZodType>(expression: E) {
       .array(z.strictObject({ from: expression, to: expression, ei: expression }))
       .max(20)
       .optional(),
-    loads: z.array(load).min(1).max(20),
+    /** None where the supports' movements are all that acts. */
+    loads: z.array(load).max(20),
+    /** Share of the section's own weight that acts across the beam, as cos α of a rafter; all of it without. */
+    own_weight: expression.optional(),
     /** Released first; any other admissible set gives the same result. */
     redundants: z.array(redundant).max(20),
     /** Dimension lines of the drawing, inner row first; each is a parameter or derived length. */
@@ -150,5 +153,7 @@ export function selectorSchema<E extends z.ZodType>(expression: E) {
     z.strictObject({ largest: z.literal('moment'), sense: z.enum(['sagging', 'hogging']), ...reading }),
     z.strictObject({ largest: z.literal('deflection'), sense: z.enum(['up', 'down']), ...reading }),
     z.strictObject({ contraflexure: z.int().min(0), from: expression.optional() }),
+    /** What the beam does not hold itself, of the parameters and reactions (RA, RB …): a rafter's vertical reaction. */
+    z.strictObject({ figure: expression, dimension: z.enum(DIMENSION_NAMES) }),
   ]);
 }

@@ -1,9 +1,8 @@
-import { supportLetter } from '../model/index';
 import { DIMENSIONS, equalDimensions, formatFor, type Purpose, type UnitSystemName } from '../quantity/index';
 import type { Rule, Template } from './document';
 import { evaluateNumber, evaluateTruth, rowsOf, type Scope, within } from './evaluate';
 import type { Severity } from './parts';
-import { allMeasured, kindsOf, sourcesOf } from './scope';
+import { allMeasured, kindsOf, reactionsOf, sourcesOf } from './scope';
 import { symbolsOf } from './tree';
 
 /** What is known of the section and the result, for the rules that speak of them. */
@@ -45,13 +44,12 @@ export function judgeRules(
 }
 
 function withKnown(scope: Scope, { depth, ga, solution }: Known): Scope {
-  const more = new Map<string, number | string>([['shear', ga == null ? 'left-out' : 'included']]);
+  const more = new Map<string, number | string>(solution && reactionsOf(solution.reactions));
+  more.set('shear', ga == null ? 'left-out' : 'included');
   if (depth !== undefined) more.set('h', depth);
   if (solution) {
     const { max, min } = solution.extremes.deflection;
     more.set('dmax', Math.max(max.value, -min.value));
-    for (const [index, { vertical }] of solution.reactions.entries())
-      more.set(`R${supportLetter(index)}`, vertical);
   }
   return within(more, scope);
 }

@@ -50,14 +50,31 @@ export function kindsOf(template: Template): Map<string, Kind> {
 
 /** Kinds of a rule: the result's symbols besides. */
 export function ruleKinds(template: Template): Map<string, Kind> {
-  const kinds = kindsOf(template);
+  const kinds = withReactions(template, template.beam.supports);
   kinds.set('h', ofDimension(DIMENSIONS.length));
   kinds.set('shear', { is: 'text', values: SHEAR });
   kinds.set('dmax', ofDimension(DIMENSIONS.length));
-  for (const index of template.beam.supports.keys())
-    kinds.set(`R${supportLetter(index)}`, ofDimension(DIMENSIONS.force));
   return kinds;
 }
+
+/** Kinds of a figure: the reactions besides, as many as there always are. */
+export const figureKinds = (template: Template): Map<string, Kind> =>
+  withReactions(
+    template,
+    template.beam.supports.filter(({ when }) => when === undefined),
+  );
+
+function withReactions(template: Template, supports: readonly unknown[]): Map<string, Kind> {
+  const kinds = kindsOf(template);
+  for (const index of supports.keys()) kinds.set(reactionSymbol(index), ofDimension(DIMENSIONS.force));
+  return kinds;
+}
+
+const reactionSymbol = (index: number): string => `R${supportLetter(index)}`;
+
+/** The reactions by their symbols. */
+export const reactionsOf = (reactions: readonly { vertical: number }[]): Map<string, number> =>
+  new Map(reactions.map(({ vertical }, index) => [reactionSymbol(index), vertical]));
 
 type Cell = number | string | readonly Scope[];
 

@@ -2,7 +2,8 @@ import type { Extreme, Solution } from '../beam/index';
 import { evaluate, type Piecewise } from '../polynomial/index';
 import type { DimensionName } from '../quantity/index';
 import type { Selector } from './document';
-import { evaluateNumber, type Scope } from './evaluate';
+import { evaluateNumber, type Scope, within } from './evaluate';
+import { reactionsOf } from './scope';
 
 type Expression = { text: string; tree: Parameters<typeof evaluateNumber>[0] };
 type Side = 'left' | 'right' | undefined;
@@ -15,6 +16,7 @@ const isPosition = (selector: Selector): boolean =>
 
 /** Dimension of what a selector reads. */
 export function selectorDimension(selector: Selector): DimensionName {
+  if ('figure' in selector) return selector.dimension;
   if (isPosition(selector) || 'deflection' in selector) return 'length';
   if ('reaction' in selector) return selector.component === 'moment' ? 'moment' : 'force';
   if ('shear' in selector) return 'force';
@@ -25,6 +27,7 @@ export function selectorDimension(selector: Selector): DimensionName {
 
 /** A selector in words: "reaction at B", "moment at L + a", "largest deflection down". */
 function selectorName(selector: Selector): string {
+  if ('figure' in selector) return selector.figure.text;
   if ('reaction' in selector)
     return selector.component === 'moment'
       ? `moment reaction at ${selector.reaction}`
@@ -48,9 +51,11 @@ function selectorName(selector: Selector): string {
  */
 export function select(selector: Selector, solution: Solution, scope: Scope): Selected {
   const length = solution.diagrams.moment.breaks.at(-1) ?? 0;
+  const value = readValue(selector, solution, scope);
   return {
-    value: readValue(selector, solution, scope),
-    scale: isPosition(selector) ? length : scaleOf(selector, solution),
+    value,
+    scale:
+      'figure' in selector ? Math.abs(value) : isPosition(selector) ? length : scaleOf(selector, solution),
     dimension: selectorDimension(selector),
     name: selectorName(selector),
   };
@@ -58,6 +63,8 @@ export function select(selector: Selector, solution: Solution, scope: Scope): Se
 
 function readValue(selector: Selector, solution: Solution, scope: Scope): number {
   const { diagrams, extremes, reactions } = solution;
+  if ('figure' in selector)
+    return evaluateNumber(selector.figure.tree, within(reactionsOf(reactions), scope));
   if ('reaction' in selector) {
     const reaction = reactions[selector.reaction.charCodeAt(0) - 'A'.charCodeAt(0)];
     return reaction?.[selector.component ?? 'vertical'] ?? Number.NaN;

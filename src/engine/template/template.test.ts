@@ -1,11 +1,12 @@
 import { describe, expect, test } from 'vitest';
-import { instanceAt, shippedTemplate, writtenTemplates } from '../../../tests/support/templates';
+import { authored, instanceAt, shippedTemplate, writtenTemplates } from '../../../tests/support/templates';
 import { solveBeam } from '../beam/index';
 import { readBeam } from '../model/index';
 import { authorTemplate } from './author';
 import { checkTemplate } from './check';
 import { type Template, templateDocument } from './document';
 import { instantiate } from './instance';
+import { runProofCases } from './proof';
 import { judgeRules } from './rules';
 import { readParameters } from './values';
 
@@ -147,6 +148,12 @@ describe('an instance', () => {
     expect(loadNames).toHaveLength(beam.loads.length);
   });
 
+  test('takes the share of the own weight that acts across the beam', () => {
+    const sloping = authored(edited('simple-span-uniform', ['beam', 'own_weight'], '0.8'));
+    const { beam } = instanceAt(sloping, {}, { selfWeight: 300 });
+    expect(beam.loads.at(-1)).toMatchObject({ w0: 240, w1: 240, group: 'G' });
+  });
+
   test('takes its redundants and stiffness from the caller', () => {
     const { beam, ei } = instanceAt(
       canopy,
@@ -219,6 +226,18 @@ function edited(slug: string, path: readonly (string | number)[], value: unknown
   return copy;
 }
 
+test('a figure is calculated from the reactions that the engine finds', () => {
+  const quantity = { figure: 'RA + RB', dimension: 'force' };
+  const proves = (exact: string) =>
+    runProofCases(
+      authored(
+        edited('propped-cantilever-overhang-uniform', ['proof_cases', 0, 'expect'], [{ quantity, exact }]),
+      ),
+    )[0]?.ok;
+  expect(proves('w*(L + a)')).toBe(true);
+  expect(proves('w*L')).toBe(false);
+});
+
 describe('authoring', () => {
   const SLUG = 'propped-cantilever-overhang-uniform';
   test.each<[readonly (string | number)[], unknown, string]>([
@@ -248,6 +267,9 @@ describe('authoring', () => {
     [['results', 0, 'expression'], 'w*L^2', 'wrong_dimension'],
     [['results', 0, 'source'], 'nowhere', 'unknown'],
     [['results', 0, 'quantity'], { reaction: 'D' }, 'unknown'],
+    [['results', 0, 'quantity'], { figure: 'RA + RC', dimension: 'force' }, 'unsound'],
+    [['results', 0, 'quantity'], { figure: 'RA*L', dimension: 'force' }, 'wrong_dimension'],
+    [['beam', 'own_weight'], 'L', 'wrong_dimension'],
     [['proof_cases', 0, 'expect', 0], { result: 'nothing' }, 'unknown'],
     [['proof_cases', 0, 'expect', 0], { quantity: { reaction: 'B' }, printed: 'about 3' }, 'not_printed'],
     [['proof_cases', 0, 'expect', 0], { quantity: { moment: 'w' }, exact: 'w*L^2' }, 'wrong_dimension'],

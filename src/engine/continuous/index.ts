@@ -1,0 +1,1 @@
+export { type ContinuousBeam, continuousBeam } from './continuous-beam';

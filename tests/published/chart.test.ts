@@ -1,7 +1,7 @@
 import { readFileSync } from 'node:fs';
 import Papa from 'papaparse';
 import { describe, expect, test } from 'vitest';
-import { type Solution, solveBeam } from '@/engine/beam/index';
+import { solveBeam } from '@/engine/beam/index';
 import {
   chartTerms,
   evaluate as evaluateFormula,
@@ -11,10 +11,10 @@ import {
   total,
 } from '@/engine/chart/index';
 import { type Beam, type Load, readBeam } from '@/engine/model/index';
-import { evaluate } from '@/engine/polynomial/index';
 import { isProven, proveSolution } from '@/engine/proof/index';
 import { ARRANGEMENTS } from '../support/arrangements';
 import { expectPrinted } from '../support/printed';
+import { quantityOf } from '../support/printed-value';
 
 type Row = Record<
   'source' | 'edition' | 'table' | 'case' | 'arrangement' | 'quantity' | 'printed' | 'units' | 'from_memory',
@@ -30,39 +30,6 @@ function beamOf(arrangement: string): Beam {
   const reading = readBeam(document);
   if (!reading.ok) throw new Error(JSON.stringify(reading.faults));
   return reading.value;
-}
-
-/** The tables' signs: reactions up, moments sagging, deflection down, slope clockwise. */
-function quantityOf(quantity: string, beam: Beam, { reactions, diagrams, extremes }: Solution): number {
-  const at = Number(/ at ([\d.]+)$/.exec(quantity)?.[1]);
-  switch (true) {
-    case /^R\d$/.test(quantity):
-      return reactions[Number(quantity[1]) - 1]!.vertical;
-    case quantity === 'M max':
-      return extremes.moment.max.value;
-    case quantity === 'M min':
-      return extremes.moment.min.value;
-    case quantity === 'x of M max':
-      return extremes.moment.max.at[0]!;
-    case quantity === 'd max':
-      return -extremes.deflection.min.value;
-    case quantity === '1/d max':
-      return -1 / extremes.deflection.min.value;
-    case quantity === 'rise max':
-      return extremes.deflection.max.value;
-    case quantity === 'x of d max':
-      return extremes.deflection.min.at[0]!;
-    case quantity === 'x of d max from right':
-      return beam.length - extremes.deflection.min.at[0]!;
-    case quantity.startsWith('M at'):
-      return evaluate(diagrams.moment, at)[0];
-    case quantity.startsWith('d at'):
-      return -evaluate(diagrams.deflection, at)[0];
-    case quantity.startsWith('slope at'):
-      return -evaluate(diagrams.slope, at)[0];
-    default:
-      throw new Error(`"${quantity}" is no quantity`);
-  }
 }
 
 /** The same from the chart register, where it is a deflection or slope of a determinate beam. */

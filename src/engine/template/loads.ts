@@ -6,7 +6,7 @@ import type { Expression } from './tree';
 import { isRows, type Values } from './values';
 
 export type LoadTemplate = Template['beam']['loads'][number];
-/** What a load is called: its symbol where its size is one symbol (else ''), and that as TeX. */
+/** What a load is called: its symbol where a size of it is one symbol (else ''), and that as TeX. */
 export type NamedLoad = { symbol: string; tex: string; group: string };
 
 /** One load of the beam: a load of the template, of one group, in one row of the list it is repeated over. */
@@ -106,8 +106,10 @@ function groupsOf(template: Template, load: LoadTemplate, values: Values): strin
 
 /** What drawing and derivation call a load: P_2 is the one of the second row; groups share their letter. */
 export function nameOf(template: Template, { template: load, group, row }: LoadShare): NamedLoad {
-  const [size] = sizeExpressions(load);
-  const symbol = typeof size?.tree === 'string' ? size.tree : '';
+  const symbol =
+    sizeExpressions(load)
+      .map(({ tree }) => tree)
+      .find((tree) => typeof tree === 'string') ?? '';
   const tex = [...allMeasured(template), ...template.derived].find((one) => one.symbol === symbol)?.tex ?? '';
   return { symbol, tex: row === undefined || tex === '' ? tex : `${tex}_{${row}}`, group };
 }

@@ -1,4 +1,11 @@
-import { DIMENSIONS, equalDimensions, formatFor, type Purpose, type UnitSystemName } from '../quantity/index';
+import {
+  DIMENSIONS,
+  equalDimensions,
+  formatFor,
+  formatQuantity,
+  type Purpose,
+  type UnitSystemName,
+} from '../quantity/index';
 import type { Rule, Template } from './document';
 import { evaluateNumber, evaluateTruth, rowsOf, type Scope, within } from './evaluate';
 import type { Severity } from './parts';
@@ -82,12 +89,18 @@ function pathOf(template: Template, { expression, repeat }: Rule): string[] {
 function fill(template: Template, rule: Rule, scope: Scope, system: UnitSystemName): string {
   return rule.message.replaceAll(PLACEHOLDER, (_, symbol: string) => {
     const value = scope.get(symbol);
-    return typeof value === 'number' ? formatFor(value, purposeOf(template, symbol), system) : String(value);
+    return typeof value === 'number' ? figureOf(template, symbol, value, system) : String(value);
   });
 }
 
 /** A symbol to be filled in, as in "The overhang {a} is too long". */
 export const PLACEHOLDER = /\{([A-Za-z0-9]+)\}/g;
+
+/** A parameter that names its own unit is shown in it, as its field is. */
+function figureOf(template: Template, symbol: string, value: number, system: UnitSystemName): string {
+  const unit = allMeasured(template).find((one) => one.symbol === symbol)?.units?.[system];
+  return unit ? formatQuantity(value, unit) : formatFor(value, purposeOf(template, symbol), system);
+}
 
 /** How the figure of a symbol is shown. */
 function purposeOf(template: Template, symbol: string): Purpose {

@@ -131,6 +131,8 @@ describe('an instance', () => {
     ]);
     expect(loadNames).toEqual([{ symbol: 'w', tex: 'w', group: 'G' }]);
     expect(instanceAt(points, {}).loadNames.map(({ tex }) => tex)).toEqual(['w', 'P_{1}', 'P_{2}']);
+    const heavyAtProp = instanceAt(shippedTemplate('propped-cantilever-triangle'), { heavy: 'prop' });
+    expect(heavyAtProp.loadNames.map(({ tex }) => tex)).toEqual(['w']);
   });
 
   test('keeps every load in its group, and the groups add up', () => {
@@ -187,6 +189,24 @@ describe('an instance', () => {
     });
     const made = values.ok ? instantiate(points, values.values) : undefined;
     expect(made?.ok === false && made.faults[0]?.path).toEqual(['loads', 1]);
+  });
+});
+
+describe('a template without loads', () => {
+  const settling = shippedTemplate('support-settlement');
+
+  test('is a beam that its supports’ movements alone bend', () => {
+    const { beam } = instanceAt(settling, { D: '8 mm' });
+    expect(beam.loads).toEqual([]);
+    expect(beam.supports[1]).toEqual({ at: 6, kind: 'roller', rise: -0.008 });
+  });
+
+  test('tells a movement in the unit of its field', () => {
+    const { scope } = instanceAt(settling, { D: '60 mm' });
+    const size = (system: 'metric' | 'us') =>
+      judgeRules(settling, scope, {}, system).find(({ id }) => id === 'settlement-size')?.message;
+    expect(size('metric')).toMatch(/^The movement 60\u00a0mm is more than/);
+    expect(size('us')).toMatch(/^The movement 2\.36\d*\u00a0in is more than/);
   });
 });
 

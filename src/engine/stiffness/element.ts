@@ -33,41 +33,74 @@ export function pointsOf(beam: Beam): number[] {
 }
 
 export function elementsOf(beam: Beam, points: readonly number[]): Element[] {
-  return points.slice(1).map((to, k) => elementBetween(beam, points[k]!, to));
+  const { loads, curvatures } = actingOn(beam, points);
+  let s = 0;
+  return loads.map((load, k) => {
+    const [from, to] = [points[k]!, points[k + 1]!];
+    while (beam.segments[s]!.to < to) s++;
+    const segment = beam.segments[s]!;
+    const length = Wide.difference(to, from);
+    const ei = Wide.of(segment.ei);
+    const shearFlexibility = segment.ga === null ? Wide.ZERO : Wide.ONE.over(segment.ga);
+    const phi = ei.times(12).times(shearFlexibility).over(length.times(length));
+    return { from, to, length, ei, shearFlexibility, phi, load, curvature: curvatures[k]! };
+  });
 }
 
-function elementBetween(beam: Beam, from: number, to: number): Element {
-  const segment = beam.segments.find((s) => s.from <= from && to <= s.to);
-  if (!segment) throw new RangeError(`no segment of the beam holds ${from} to ${to}`);
-  const length = Wide.difference(to, from);
-  const ei = Wide.of(segment.ei);
-  const shearFlexibility = segment.ga === null ? Wide.ZERO : Wide.ONE.over(segment.ga);
-  let [left, right, curvature] = [Wide.ZERO, Wide.ZERO, Wide.ZERO];
+/** What starts (or, taken away, ends) at a point: a load's intensity and its rate, a curvature, and how many there are. */
+type Onset = { intensity: Wide; rate: Wide; curvature: Wide; count: number };
+
+/**
+ * The line loads and the curvatures on each piece, in one walk along the points, so that many loads on many points cost
+ * their sum and not their product. Where nothing acts, rounding leaves nothing either.
+ */
+function actingOn(beam: Beam, points: readonly number[]) {
+  const onsets = onsetsOf(beam, points);
+  const loads: (readonly [Wide, Wide])[] = [];
+  const curvatures: Wide[] = [];
+  let acting: Onset = NOTHING;
+  for (let k = 0; k < points.length - 1; k++) {
+    const count = acting.count + onsets[k]!.count;
+    acting = count === 0 ? NOTHING : joined(acting, onsets[k]!, 1);
+    const run = Wide.difference(points[k + 1]!, points[k]!);
+    const end = acting.intensity.plus(acting.rate.times(run));
+    loads.push([acting.intensity, end]);
+    curvatures.push(acting.curvature);
+    acting = { ...acting, intensity: end };
+  }
+  return { loads, curvatures };
+}
+
+const NOTHING: Onset = { intensity: Wide.ZERO, rate: Wide.ZERO, curvature: Wide.ZERO, count: 0 };
+
+function onsetsOf(beam: Beam, points: readonly number[]): Onset[] {
+  const onsets = points.map(() => NOTHING);
+  const index = new Map(points.map((x, k) => [x, k]));
+  const add = (x: number, onset: Onset, sense: 1 | -1) => {
+    const k = index.get(x)!;
+    onsets[k] = joined(onsets[k]!, onset, sense);
+  };
   for (const load of beam.loads) {
-    if (load.kind === 'point' || load.kind === 'couple' || load.from > from || load.to < to) continue;
+    if (load.kind === 'point' || load.kind === 'couple' || load.from === load.to) continue;
     if (load.kind === 'curvature') {
-      curvature = curvature.plus(Wide.of(load.kappa));
+      const onset = { ...NOTHING, curvature: Wide.of(load.kappa), count: 1 };
+      add(load.from, onset, 1);
+      add(load.to, onset, -1);
     } else {
-      left = left.plus(intensity(load, from));
-      right = right.plus(intensity(load, to));
+      const rate = Wide.difference(load.w1, load.w0).over(Wide.difference(load.to, load.from));
+      add(load.from, { ...NOTHING, intensity: Wide.of(load.w0), rate, count: 1 }, 1);
+      add(load.to, { ...NOTHING, intensity: Wide.of(load.w1), rate, count: 1 }, -1);
     }
   }
-  return {
-    from,
-    to,
-    length,
-    ei,
-    shearFlexibility,
-    phi: ei.times(12).times(shearFlexibility).over(length.times(length)),
-    load: [left, right],
-    curvature,
-  };
+  return onsets;
 }
 
-function intensity(load: { from: number; to: number; w0: number; w1: number }, x: number): Wide {
-  const part = Wide.difference(x, load.from).over(Wide.difference(load.to, load.from));
-  return Wide.of(load.w0).plus(Wide.difference(load.w1, load.w0).times(part));
-}
+const joined = (a: Onset, b: Onset, sense: 1 | -1): Onset => ({
+  intensity: a.intensity.plus(b.intensity.times(sense)),
+  rate: a.rate.plus(b.rate.times(sense)),
+  curvature: a.curvature.plus(b.curvature.times(sense)),
+  count: a.count + sense * b.count,
+});
 
 /**
  * Stiffness of a piece that bends and shears, forces on its ends from (v₁, ψ₁, v₂, ψ₂):

@@ -76,11 +76,25 @@ export function* admissibleSets(beam: Beam): Generator<Redundant[]> {
 /** The redundant with its position brought to that of a point of the beam which it coincides with. */
 export function placeRedundant(beam: Beam, redundant: Redundant): Redundant {
   if (redundant.component !== 'moment') return redundant;
-  const loads = beam.loads.flatMap((load) => ('at' in load ? [load.at] : [load.from, load.to]));
-  const segments = beam.segments.map(({ to }) => to);
-  const points = [...beam.supports.map(({ at }) => at), ...beam.hinges, 0, ...segments, ...loads];
-  const point = points.find((x) => Math.abs(x - redundant.at) <= COINCIDENT * beam.length);
-  return { at: point ?? redundant.at, component: 'moment' };
+  const at = coincident(beam, redundant.at);
+  return { at: at ?? redundant.at, component: 'moment' };
+}
+
+/** The point of the beam that x coincides with; supports, where moments are released, are looked at first. */
+function coincident({ length, supports, hinges, segments, loads }: Beam, at: number): number | undefined {
+  const near = (x: number) => Math.abs(x - at) <= COINCIDENT * length;
+  const found = supports.find((support) => near(support.at))?.at ?? hinges.find(near);
+  if (found !== undefined) return found;
+  if (near(0)) return 0;
+  const segment = segments.find(({ to }) => near(to));
+  if (segment) return segment.to;
+  for (const load of loads) {
+    if ('at' in load) {
+      if (near(load.at)) return load.at;
+    } else if (near(load.from)) return load.from;
+    else if (near(load.to)) return load.to;
+  }
+  return undefined;
 }
 
 /** Everything that keeps the set from being the beam's redundants. */

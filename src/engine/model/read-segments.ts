@@ -2,9 +2,12 @@ import type { Path, Reader } from './reader';
 import type { BeamDocument, Segment } from './types';
 import { metres } from './words';
 
-/** The segments from left to right, without those of no length. */
+/** The segments from left to right, without those of no length. An empty list beside `ei` is none. */
 export function readSegments(reader: Reader, document: BeamDocument, length: number | null): Segment[] {
-  if (!document.segments) return readOnly(reader, document, length);
+  const wholeGiven = document.ei !== undefined || document.ga !== undefined;
+  if (!document.segments || (document.segments.length === 0 && wholeGiven)) {
+    return readOnly(reader, document, length);
+  }
   for (const field of ['ei', 'ga'] as const) {
     if (document[field] === undefined) continue;
     const message = `Give ${field} either for the whole beam or in the segments, not both.`;

@@ -57,6 +57,11 @@ describe('readBeam', () => {
     });
   });
 
+  test('reads an empty list of segments beside ei as none', () => {
+    expect(beam({ segments: [] })).toEqual(beam({}));
+    expect(beam({ segments: [], ga: 5e6 })).toEqual(beam({ ga: 5e6 }));
+  });
+
   test('counts restraints against movement and rotation, springs included, less 2 and the hinges', () => {
     const supports: BeamDocument['supports'] = [
       { at: 0, kind: 'fixed' },
@@ -179,6 +184,7 @@ describe('readBeam', () => {
       ['ei conflict', 'ga conflict'],
     ],
     ['no segment', { ei: undefined, segments: [] }, ['segments required']],
+    ['no segment, and GA alone', { ei: undefined, ga: 1e6, segments: [] }, ['ei required']],
     [
       'segments with gaps',
       {

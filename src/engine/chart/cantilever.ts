@@ -1,6 +1,6 @@
+import type { Movement } from './case';
 import { type Expression, expand, multiply, negate, subtract, ZERO } from './expression';
 import type { LocalLoad } from './load';
-import type { Movement } from './register';
 import { compare, type Setting } from './setting';
 import { cut, isUniform, resultant, type Stretch } from './stretch';
 import { type ChartTerm, chartTerm } from './term';
@@ -41,6 +41,8 @@ export function cantileverTerms(
 }
 
 function lineTerms(stretch: Stretch, section: Section): ChartTerm[] | null {
+  if (!isUniform(stretch) && compare(stretch.from, ZERO, section.setting) === 0)
+    return nearLine(stretch, section);
   const [near, far] = cut(stretch, section.x, section.setting);
   const nearTerms = near ? nearLine(near, section) : [];
   if (!nearTerms || !far) return nearTerms;

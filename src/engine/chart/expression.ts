@@ -97,6 +97,16 @@ export function expand(a: Expression): Expression {
   );
 }
 
+/** Whether it can be multiplied out: no sum stands in a denominator. */
+const isWhole = (a: Expression): boolean => a.every(({ factors }) => factors.every(({ power: p }) => p > 0));
+
+/** Multiplied out where that leaves fewer terms, else as it is. */
+export function simplest(a: Expression): Expression {
+  const collected = add(a);
+  const expanded = isWhole(collected) ? expand(collected) : collected;
+  return expanded.length < collected.length ? expanded : collected;
+}
+
 /** The value, with the symbols' values. */
 export function evaluate(a: Expression, value: (name: string) => number): number {
   const monomial = ({ coefficient, powers }: Monomial) =>

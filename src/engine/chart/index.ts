@@ -1,3 +1,4 @@
+export type { ChartCase, Movement } from './case';
 export {
   add,
   constant,
@@ -15,10 +16,18 @@ export {
   ZERO,
 } from './expression';
 export { formula } from './formula';
-export type { NamedLoad } from './load';
-export { CHART, type Movement } from './register';
-export { chartTerms, movementTerms, type Released, type SupportMovements } from './released';
+export { forceOf, momentAbout, type NamedLoad } from './load';
+export { CHART } from './register';
+export {
+  chartTerms,
+  movementTerms,
+  type Released,
+  type SupportForces,
+  type SupportMovements,
+  shearTerms,
+  supportForces,
+} from './released';
 export type { Setting } from './setting';
-export { cut, resultant } from './stretch';
+export { cut } from './stretch';
 export { type ChartTerm, total } from './term';
 export { texOf, type Writer } from './tex';

@@ -1,5 +1,5 @@
-import { type Expression, expand, negate, subtract } from './expression';
-import type { Stretch } from './stretch';
+import { type Expression, expand, multiply, negate, subtract, ZERO } from './expression';
+import { resultant, type Stretch } from './stretch';
 
 /** A load with its places and sizes as formulas. Signs are the engine's: down, anticlockwise, sagging. */
 export type NamedLoad =
@@ -66,3 +66,27 @@ export function shifted(load: LocalLoad, by: Expression): LocalLoad {
       return { ...load, from: forth(load.from), to: forth(load.to) };
   }
 }
+
+/** What a load pushes, down. */
+export function forceOf(load: NamedLoad | LocalLoad): Expression {
+  if (load.kind === 'point') return load.p;
+  return load.kind === 'line' ? resultant(load, load.from).force : ZERO;
+}
+
+/** What a load turns about a place of its axis, clockwise. */
+export function momentOf(load: LocalLoad, about: Expression): Expression {
+  switch (load.kind) {
+    case 'point':
+      return multiply(load.p, expand(subtract(load.a, about)));
+    case 'couple':
+      return load.m;
+    case 'line':
+      return resultant(load, about).moment;
+    case 'curvature':
+      return ZERO;
+  }
+}
+
+/** What a load on the beam turns about a place of it, clockwise. */
+export const momentAbout = (load: NamedLoad, about: Expression): Expression =>
+  momentOf(localLoad({ origin: ZERO, direction: 1 }, load), about);

@@ -1,5 +1,6 @@
+import type { ChartCase, Movement } from './case';
 import { add, type Expression, multiply, substitute } from './expression';
-import { type ChartCase, chart, type Movement } from './register';
+import { chart } from './register';
 import { compare, type Setting } from './setting';
 
 /** One load's part of a movement, and the chart case that it comes from. */

@@ -40,7 +40,7 @@ function spotsOf(beam: NamedBeam, { from, to, released }: Piece): Spot[] {
   ];
   const isHeld = (x: number) => beam.supports.some((s) => s.x === x && s.support.vertical.kind !== 'free');
   const free = ends.filter(({ x }) => !isHeld(x));
-  if (released.kind === 'cantilever') return free;
+  if (released.kind !== 'simple') return free;
   const half = multiply(constant({ n: 1, d: 2 }), expand(subtract(released.right, released.left)));
   const middle = expand(add(released.left, half));
   const x = beam.letters.of(middle);

@@ -171,10 +171,12 @@ const pointsWithin = ({ from, to }: LineLoad, cuts: ReadonlySet<number>): number
   to,
 ];
 
+/** The load's letter is the size at its left end, or at its right where there is none at its left. */
 function sizedPoint(load: LineLoad, x: number, own: Size, letters: Letters, places: Places): SizedPoint {
   const { from, to, w0, w1 } = load;
   const value = x === to ? w1 : w0 + ((w1 - w0) * (x - from)) / (to - from);
-  const size = x === from ? own(value, 'line', 'w') : value === 0 ? ZERO : letters.number('w', value, 'line');
+  const isOwn = x === (w0 === 0 ? to : from);
+  const size = value === 0 ? ZERO : isOwn ? own(value, 'line', 'w') : letters.number('w', value, 'line');
   return { x, at: places.load(x), value, size };
 }
 

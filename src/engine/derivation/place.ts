@@ -44,9 +44,11 @@ export class Places {
     return this.remember(x, at);
   }
 
-  /** Follows the named lengths from the left end as far as they reach. */
+  /** Follows the named lengths from the left end as far as they reach; the whole beam's comes before its parts. */
   private name(lengths: readonly NamedLength[]): void {
-    const usable = lengths.filter(
+    const isWhole = ({ from, to }: NamedLength) => this.isSame(to - from, this.length);
+    const inOrder = [...lengths.filter(isWhole), ...lengths.filter((one) => !isWhole(one))];
+    const usable = inOrder.filter(
       ({ from, to, tex }) => to > from && this.letters.add(tex, to - from, 'length') !== null,
     );
     for (let grown = true; grown; ) {

@@ -4,10 +4,11 @@ import {
   divide,
   type Expression,
   expand,
+  forceOf,
+  momentAbout,
   multiply,
   type NamedLoad,
   negate,
-  resultant,
   subtract,
   symbol,
   ZERO,
@@ -156,33 +157,13 @@ function solvedFor(part: Part, about: Action | null, wanted: Action): Expression
   };
   const [left, right] = part.moments;
   const sum = add(
-    ...part.loads.map((load) => negate(about ? loadMoment(load, about.at) : loadForce(load))),
+    ...part.loads.map((load) => negate(about ? momentAbout(load, about.at) : forceOf(load))),
     ...(about ? [negate(left), right] : []),
     ...others.map(share),
   );
   const factor =
     wanted.kind === 'couple' ? constant(wanted.amount) : multiply(constant(wanted.amount), lever(wanted.at));
   return divide(negate(sum), factor);
-}
-
-/** Downward. */
-function loadForce(load: NamedLoad): Expression {
-  if (load.kind === 'point') return load.p;
-  return load.kind === 'line' ? resultant(load, load.from).force : ZERO;
-}
-
-/** Clockwise about a point. */
-function loadMoment(load: NamedLoad, about: Expression): Expression {
-  switch (load.kind) {
-    case 'point':
-      return multiply(load.p, expand(subtract(load.at, about)));
-    case 'couple':
-      return negate(load.m);
-    case 'line':
-      return resultant(load, about).moment;
-    case 'curvature':
-      return ZERO;
-  }
 }
 
 /**
@@ -223,7 +204,7 @@ function momentFrom(
     if (load.kind === 'couple' && !isBeyond(beam.letters.of(load.at))) return [];
     const within = load.kind === 'couple' || load.kind === 'point' ? load : partOn(beam, load, from, to);
     const isOther = within?.kind === 'point' && !isBeyond(beam.letters.of(within.at));
-    return within && !isOther ? [loadMoment(within, at)] : [];
+    return within && !isOther ? [momentAbout(within, at)] : [];
   });
   const clockwise = add(...actions, ...loads);
   const [left, right] = part.moments;

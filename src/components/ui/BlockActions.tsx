@@ -12,10 +12,20 @@ export interface BlockAction {
   onPress?: (() => void) | undefined;
   /** Why it cannot be done now. */
   reason?: string | undefined;
+  /** The reason is no fault: there is nothing to do. */
+  isQuiet?: boolean | undefined;
 }
 
-export function ActionButton({ action, tone }: { action: BlockAction; tone: 'inverted' | 'outlined' }) {
-  const { label, href, form, onPress, ...rest } = action;
+interface ActionProps {
+  action: BlockAction;
+  tone: 'inverted' | 'outlined';
+  /** Id of the element that gives the reason, where there is one. */
+  reasonId: string;
+}
+
+/** One element whether it can be pressed or not, so that a press that turns it off keeps the focus. */
+export function ActionButton({ action, tone, reasonId }: ActionProps) {
+  const { label, href, form, onPress, reason, ...rest } = action;
   return (
     <Button
       tone={tone}
@@ -27,6 +37,7 @@ export function ActionButton({ action, tone }: { action: BlockAction; tone: 'inv
       value={rest.value}
       type={form ? 'submit' : 'button'}
       onClick={onPress}
+      reasonId={reason === undefined ? undefined : reasonId}
     >
       {label}
     </Button>
@@ -35,38 +46,45 @@ export function ActionButton({ action, tone }: { action: BlockAction; tone: 'inv
 
 export function MainAction({ action }: { action: BlockAction }) {
   const id = useId();
-  if (action.reason === undefined) {
-    return (
-      <div className="col-span-6 grid p-0 [&_button,&_a]:min-h-52 [&_button,&_a]:text-[1.0625rem]">
-        <ActionButton action={action} tone="inverted" />
-      </div>
-    );
-  }
   return (
     <>
       <div className="col-span-6 grid p-0 [&_button,&_a]:min-h-52 [&_button,&_a]:text-[1.0625rem]">
-        <Button size="block" reasonId={id}>
-          {action.label}
-        </Button>
+        <ActionButton action={action} tone="inverted" reasonId={id} />
       </div>
-      <p id={id} className="col-span-6 text-center text-schedule font-semibold text-error">
-        {action.reason}
-      </p>
+      {action.reason !== undefined && (
+        <p
+          id={id}
+          className={`col-span-6 text-center text-schedule ${action.isQuiet ? 'text-ink-2' : 'font-semibold text-error'}`}
+        >
+          {action.reason}
+        </p>
+      )}
     </>
   );
 }
 
-export function OtherActions({ actions }: { actions: readonly BlockAction[] }) {
-  const span = actions.length === 1 ? 'col-span-6' : 'col-span-3';
-  return actions.map((action) => (
-    <div key={action.label} className={`grid p-0 ${span}`}>
-      {action.reason === undefined ? (
-        <ActionButton action={action} tone="outlined" />
-      ) : (
-        <Button size="block" reason={action.reason}>
-          {action.label}
-        </Button>
+/** The first two, side by side. */
+export function OtherActions({ actions: [first, second] }: { actions: readonly BlockAction[] }) {
+  const span = second ? 'col-span-3' : 'col-span-6';
+  return (
+    <>
+      {first && <OtherAction action={first} span={span} />}
+      {second && <OtherAction action={second} span={span} />}
+    </>
+  );
+}
+
+function OtherAction({ action, span }: { action: BlockAction; span: string }) {
+  const id = useId();
+  const { reason } = action;
+  return (
+    <div className={`grid p-0 ${reason === undefined ? '' : 'content-start'} ${span}`}>
+      <ActionButton action={action} tone="outlined" reasonId={id} />
+      {reason !== undefined && (
+        <span id={id} className="px-10 py-6 text-center text-note text-ink-2">
+          {reason}
+        </span>
       )}
     </div>
-  ));
+  );
 }

@@ -56,24 +56,23 @@ export function Button({ tone, size, keyName, href, reason, reasonId, children, 
     </>
   );
   if (off) {
+    const button = (
+      <button
+        type="button"
+        aria-disabled="true"
+        aria-describedby={reasonId ?? ownId}
+        className={buttonClass(looks, true)}
+      >
+        {children}
+      </button>
+    );
+    if (reason === undefined) return button;
     return (
-      <span className={size === 'block' ? 'grid' : 'inline-flex flex-wrap items-center gap-x-10 gap-y-4'}>
-        <button
-          type="button"
-          aria-disabled="true"
-          aria-describedby={reasonId ?? ownId}
-          className={buttonClass(looks, true)}
-        >
-          {children}
-        </button>
-        {reason && (
-          <span
-            id={ownId}
-            className={`text-note text-ink-2 ${size === 'block' ? 'px-10 py-6 text-center' : ''}`}
-          >
-            {reason}
-          </span>
-        )}
+      <span className="inline-flex flex-wrap items-center gap-x-10 gap-y-4">
+        {button}
+        <span id={ownId} className="text-note text-ink-2">
+          {reason}
+        </span>
       </span>
     );
   }

@@ -1,6 +1,5 @@
 import { type ReactNode, useId } from 'react';
 import { ActionButton, type BlockAction } from './BlockActions';
-import { Button } from './Button';
 import { type SheetStatus, StatusStamp } from './StatusStamp';
 
 interface TitleStripProps {
@@ -49,17 +48,11 @@ function StripAction({ action }: { action: BlockAction }) {
   const id = useId();
   return (
     <div className="grid border-l border-ink max-md:flex-1 [&_:is(button,a)]:px-28 [&_:is(button,a)]:text-[1rem]">
-      {action.reason === undefined ? (
-        <ActionButton action={action} tone="inverted" />
-      ) : (
-        <>
-          <Button size="block" reasonId={id}>
-            {action.label}
-          </Button>
-          <span id={id} className="sr-only">
-            {action.reason}
-          </span>
-        </>
+      <ActionButton action={action} tone="inverted" reasonId={id} />
+      {action.reason !== undefined && (
+        <span id={id} className="sr-only">
+          {action.reason}
+        </span>
       )}
     </div>
   );

@@ -111,6 +111,14 @@ describe('what the strip shows', () => {
     expect(has(drawn, 'role="slider"')).toBe(false);
   });
 
+  test('the sheet at its height where nothing is drawn: the member has the room of the strips', () => {
+    const boxOf = (drawn: string) => /viewBox="([^"]*)"/.exec(drawn)?.[1];
+    const fault = { text: 'Span is 0 m', advice: 'Give 1 m to 30 m.', place: 'L' };
+    const failing = draw(PROPPED, { solution: null, dashed: true, fault, mode: 'screen' });
+    expect(boxOf(failing)).toBe(boxOf(draw(PROPPED, { mode: 'screen' })));
+    expect(textsOf(failing)).toContain('Give 1 m to 30 m.');
+  });
+
   test('baselines and a reason, and no diagram, of a beam that moves', () => {
     const document: BeamDocument = { ...PROPPED, supports: [{ at: 2, kind: 'roller' }] };
     const reading = readBeam(document);

@@ -96,12 +96,13 @@ function Drawn({ input, frame, layout, height, ...props }: DrawnProps) {
       {layout.diagrams.map((diagram) => (
         <DiagramStrip key={diagram.quantity} beam={beam} frame={frame} format={format} layout={diagram} />
       ))}
-      {layout.empty.map(({ quantity, top }) => (
+      {layout.empty.map(({ quantity, top, bottom }) => (
         <EmptyStrip
           key={quantity}
           quantity={quantity}
           frame={frame}
           top={top}
+          bottom={bottom}
           message={quantity === messageAt ? notDrawn : undefined}
         />
       ))}
@@ -153,6 +154,7 @@ export function ElevationStrip(props: ElevationStripProps) {
   const frame = useFrame(props, mode === 'print' ? (props.width ?? WIDTHS.print) : measured);
   const quantities = props.quantities ?? QUANTITIES;
   const momentSide = props.momentSide ?? 'tension';
+  const clouded = props.fault !== undefined;
   const input = useMemo(
     (): StripInput => ({
       beam,
@@ -164,9 +166,22 @@ export function ElevationStrip(props: ElevationStripProps) {
       deflectionLimit,
       depth,
       momentSide,
+      clouded,
       motion,
     }),
-    [beam, solution, envelopes, reactions, quantities, symbols, deflectionLimit, depth, momentSide, motion],
+    [
+      beam,
+      solution,
+      envelopes,
+      reactions,
+      quantities,
+      symbols,
+      deflectionLimit,
+      depth,
+      momentSide,
+      clouded,
+      motion,
+    ],
   );
   const layout = useMemo(() => layStrip(input, frame, format), [input, frame, format]);
   const height = layout.to + frame.axis;

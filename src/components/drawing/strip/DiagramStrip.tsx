@@ -80,23 +80,24 @@ export function EmptyStrip({
   quantity,
   frame,
   top,
+  bottom,
   message,
 }: {
   quantity: Quantity;
   frame: Frame;
   top: number;
+  bottom: number;
   message: string | undefined;
 }) {
-  const bottom = top + frame.head + frame.heights[quantity];
-  const base = (top + frame.head + bottom) / 2;
   const phone = frame.mode === 'phone';
+  const base = phone ? (top + frame.head + bottom) / 2 : (top + bottom) / 2;
   const middle = (frame.x0 + frame.x1) / 2;
   const gap = message ? textWidth(message, 13.5) / 2 + 8 : 0;
   const baseline = `M${frame.x0} ${base}H${middle - gap}M${middle + gap} ${base}H${frame.x1}`;
   return (
     <g>
       <path className="medium-rule" d={baseline} />
-      <text x={frame.mode === 'print' ? 10 : 14} y={phone ? top + 17 : top + 22} className="strip-name">
+      <text x={frame.mode === 'print' ? 10 : 14} y={phone ? top + 17 : base + 4} className="strip-name">
         {TITLE[quantity]}
       </text>
       {message && (

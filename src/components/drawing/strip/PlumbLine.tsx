@@ -1,9 +1,10 @@
-import type { KeyboardEvent, PointerEvent } from 'react';
+import { type KeyboardEvent, type PointerEvent, useMemo } from 'react';
 import { type DrawingFormat, figure } from '../format';
 import { textWidth } from '../geometry/text-width';
 import { ticksPath } from '../marks/paths';
 import type { DiagramLayout } from './diagram-layout';
 import { type Frame, xOf } from './frame';
+import { plumbPath } from './plumb-path';
 import { readingsAt } from './readings';
 import type { StripLayout } from './strip-layout';
 import { stationAt, stationByKey } from './use-plumb';
@@ -126,7 +127,18 @@ export function PlumbLine(props: Props) {
   const phone = frame.mode === 'phone';
   const text = `x = ${figure(format, 'length', x)}`;
   const handle = phone ? 8 : 18;
-  const line = `M${at} ${handle + 12}V${layout.elevation.height}M${at} ${layout.from}V${layout.to + 24}`;
+  const texts = useMemo(
+    () => [...layout.elevation.figures, ...layout.diagrams.flatMap(({ labels }) => labels)],
+    [layout],
+  );
+  const line = plumbPath(
+    at,
+    [
+      [handle + 12, layout.elevation.height],
+      [layout.from, layout.to + 24],
+    ],
+    texts,
+  );
   return (
     <>
       {!phone && (

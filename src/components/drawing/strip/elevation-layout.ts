@@ -43,18 +43,21 @@ export type ElevationLayout = {
 
 const FIGURE_SIZE = 13.5;
 const ROW = 28;
+const CLOUDED_ROW = 54;
+/** Height of what a cloud advises. */
+const ADVICE = 40;
 
 function layDimensions(
   beam: Beam,
   lengths: readonly NamedLength[],
   frame: Frame,
   format: DrawingFormat,
-  first: number,
+  { first, pitch }: { first: number; pitch: number },
 ) {
   const rows: DimensionRow[] = [];
   const figures: Figure[] = [];
   dimensionRows(beam, lengths).forEach((parts, i) => {
-    const y = first + i * ROW;
+    const y = first + i * pitch;
     const xs = [...new Set(parts.flatMap(({ from, to }) => [xOf(frame, from), xOf(frame, to)]))];
     rows.push({
       y,
@@ -70,7 +73,7 @@ function layDimensions(
       figures.push({ x: xOf(frame, (from + to) / 2), y: y - 6, text, anchor: 'middle', edits });
     }
   });
-  return { rows, figures, end: first + (rows.length - 1) * ROW };
+  return { rows, figures, end: first + (rows.length - 1) * pitch };
 }
 
 /** What hangs below the member: symbols, reactions beside them, and an arrow where a support moves. */
@@ -99,6 +102,10 @@ type ElevationOptions = {
   reactions: { shown: boolean; ranged: boolean };
   /** A mechanism is drawn, and needs room to move. */
   moves: boolean;
+  /** A cloud stands over a dimension: the rows keep clear of it, and what to do is said under them. */
+  clouded: boolean;
+  /** Height to spread the drawing over, px. */
+  spare: number;
 };
 
 /** Height of the plumb line's reading in the corner. */
@@ -108,7 +115,7 @@ export function layElevation(
   beam: Beam,
   frame: Frame,
   format: DrawingFormat,
-  { depth, symbols = {}, reactions, moves }: ElevationOptions,
+  { depth, symbols = {}, reactions, moves, clouded, spare }: ElevationOptions,
 ): ElevationLayout {
   const loads = layLoads({ frame, format, names: symbols.loads ?? [] }, beam.loads);
   const tall = drawnDepth(depth, frame.perMetre, frame.depthMost);
@@ -116,10 +123,14 @@ export function layElevation(
   // A moment's value stands over the member's end, under the heading and the reading.
   // A load's figure beyond the beam's end stands clear of the plumb line's reading, which is in the same corner.
   const isBeside = frame.mode === 'screen' && loads.figures.some(({ x }) => x > xOf(frame, beam.length));
-  const top = Math.max(loads.height + (isBeside ? READING : 14), wall + 28, 84 - tall / 2);
+  const above = Math.max(loads.height + (isBeside ? READING : 14), wall + 28, 84 - tall / 2);
+  const top = above + spare / 4;
   const bottom = top + tall;
   const first = bottom + roomBelow(beam) + (moves ? MECHANISM_REACH : 0) - (frame.mode === 'screen' ? 0 : 6);
-  const dimensions = layDimensions(beam, symbols.lengths ?? [], frame, format, first);
+  const pitch = clouded ? CLOUDED_ROW : ROW;
+  const dimensions = layDimensions(beam, symbols.lengths ?? [], frame, format, { first, pitch });
+  const advice = clouded && frame.mode !== 'phone' ? ADVICE : clouded ? 10 : 0;
+  const used = (dimensions.rows.length - 1) * (pitch - ROW) + advice;
   const lines = frame.mode === 'phone' && reactions.shown ? onPhoneLines(beam) : 0;
   return {
     top,
@@ -128,7 +139,7 @@ export function layElevation(
     loads,
     dimensions: dimensions.rows,
     figures: [...loads.figures.map((each) => ({ ...each, y: top + each.y })), ...dimensions.figures],
-    height: dimensions.end + 14,
+    height: dimensions.end + 14 + advice + Math.max(0, (spare * 3) / 4 - used),
     reactionHeight: lines === 0 ? 0 : 10 + lines * (reactions.ranged ? 36 : 20),
   };
 }

@@ -12,6 +12,8 @@ type Metrics = {
   head: number;
   axis: number;
   heights: Record<Quantity, number>;
+  /** Of a strip without a result. */
+  empty: number;
   comb: number;
   combStacked: number;
   combPitch: number;
@@ -30,6 +32,7 @@ const METRICS: Record<StripMode, Metrics> = {
     head: 0,
     axis: 46,
     heights: { shear: 116, moment: 130, slope: 80, deflection: 92 },
+    empty: 56,
     comb: 26,
     combStacked: 17,
     combPitch: 22,
@@ -45,6 +48,7 @@ const METRICS: Record<StripMode, Metrics> = {
     head: 24,
     axis: 44,
     heights: { shear: 92, moment: 104, slope: 66, deflection: 76 },
+    empty: 24,
     comb: 26,
     combStacked: 15,
     combPitch: 15,
@@ -60,6 +64,7 @@ const METRICS: Record<StripMode, Metrics> = {
     head: 0,
     axis: 28,
     heights: { shear: 80, moment: 92, slope: 64, deflection: 74 },
+    empty: 44,
     comb: 18,
     combStacked: 14,
     combPitch: 18,

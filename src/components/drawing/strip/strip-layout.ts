@@ -29,6 +29,8 @@ export type StripInput = {
   deflectionLimit?: DeflectionLimit | undefined;
   depth?: number | undefined;
   momentSide: MomentSide;
+  /** Whether a cloud stands over a dimension. */
+  clouded?: boolean | undefined;
   /** How an unstable beam moves; null for one that slides sideways. */
   motion?: DisplacedShape | null | undefined;
 };
@@ -63,8 +65,8 @@ function diagramOf(input: StripInput, quantity: Quantity, format: DrawingFormat)
 export type StripLayout = {
   elevation: ElevationLayout;
   diagrams: DiagramLayout[];
-  /** Strips that stay empty, with their tops. */
-  empty: { quantity: Quantity; top: number }[];
+  /** Strips that stay empty. */
+  empty: { quantity: Quantity; top: number; bottom: number }[];
   /** Where the first strip begins and the last one ends. */
   from: number;
   to: number;
@@ -73,6 +75,15 @@ export type StripLayout = {
 /** Everything the strip draws, as numbers; pure, so it can be tested and run on the server. */
 export function layStrip(input: StripInput, frame: Frame, format: DrawingFormat): StripLayout {
   const { beam, symbols, momentSide: side } = input;
+  const drawn = input.quantities.map((quantity) => ({
+    quantity,
+    diagram: diagramOf(input, quantity, format),
+  }));
+  // Where nothing is drawn the strips close up and the member has their room: the sheet keeps its height.
+  const spare = drawn.reduce(
+    (sum, { quantity, diagram }) => sum + (diagram ? 0 : frame.heights[quantity] - frame.empty),
+    0,
+  );
   const elevation = layElevation(beam, frame, format, {
     depth: input.depth ?? beam.length / 22,
     symbols,
@@ -81,20 +92,22 @@ export function layStrip(input: StripInput, frame: Frame, format: DrawingFormat)
       ranged: input.reactions?.some(({ least }) => least !== undefined) ?? false,
     },
     moves: input.motion !== undefined,
+    clouded: input.clouded ?? false,
+    spare: frame.mode === 'screen' ? spare : 0,
   });
   const from = elevation.height + elevation.reactionHeight;
   const diagrams: DiagramLayout[] = [];
   const empty: StripLayout['empty'] = [];
   let y = from;
-  for (const quantity of input.quantities) {
-    const diagram = diagramOf(input, quantity, format);
+  for (const { quantity, diagram } of drawn) {
     if (diagram) {
       const laid = layDiagram({ beam, frame, format, side }, diagram, y);
       diagrams.push(laid);
       y = laid.bottom;
     } else {
-      empty.push({ quantity, top: y });
-      y += frame.head + frame.heights[quantity];
+      const bottom = y + frame.head + frame.empty;
+      empty.push({ quantity, top: y, bottom });
+      y = bottom;
     }
   }
   return { elevation, diagrams, empty, from, to: y };

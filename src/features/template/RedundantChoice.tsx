@@ -24,37 +24,56 @@ export function RedundantChoice({ beam, solution, chosen, onChoose }: RedundantC
         Equilibrium alone finds every reaction: there is nothing to release, and no compatibility to work.
       </p>
     );
+  const { columns, width } = CARDS[open.length + barred.length] ?? MANY_CARDS;
   return (
-    <fieldset className="grid grid-cols-2 border-t border-l border-ink max-md:grid-cols-1">
+    <fieldset className="@container">
       <legend className="sr-only">Redundant to release</legend>
-      {open.map((choice) => (
-        <OpenCard
-          key={choice.key}
-          beam={beam}
-          solution={solution}
-          choice={choice}
-          isChosen={choice.key === chosen}
-          onChoose={() => onChoose(choice.releases)}
-        />
-      ))}
-      {barred.map((choice) => (
-        <BarredCard key={choice.key} beam={beam} choice={choice} />
-      ))}
+      <div className={`grid border-t border-l border-ink max-md:grid-cols-1 ${columns}`}>
+        {open.map((choice) => (
+          <OpenCard
+            key={choice.key}
+            beam={beam}
+            solution={solution}
+            choice={choice}
+            width={width}
+            isChosen={choice.key === chosen}
+            onChoose={() => onChoose(choice.releases)}
+          />
+        ))}
+        {barred.map((choice) => (
+          <BarredCard key={choice.key} beam={beam} choice={choice} width={width} />
+        ))}
+      </div>
     </fieldset>
   );
 }
 
+interface Cards {
+  readonly columns: string;
+  /** Of a card's drawing, px. */
+  readonly width: number;
+}
+
+const MANY_CARDS: Cards = { columns: 'grid-cols-3', width: 206 };
+/** By how many there are: as many beside each other as leave no place empty. */
+const CARDS: Readonly<Record<number, Cards>> = {
+  1: { columns: 'grid-cols-1', width: 318 },
+  2: { columns: 'grid-cols-2', width: 318 },
+  4: { columns: 'grid-cols-2 @min-[900px]:grid-cols-4', width: 232 },
+};
+
 const CARD =
-  'grid min-h-44 grid-cols-[auto_minmax(0,1fr)] content-start items-start gap-x-9 gap-y-2 border-r border-b border-ink px-12 pt-9 pb-10';
-const DRAWING = 'col-span-2 mt-4 [&_svg]:h-auto [&_svg]:max-w-full';
+  'grid min-h-44 grid-cols-[auto_minmax(0,1fr)] grid-rows-[auto_1fr] items-start gap-x-9 gap-y-2 border-r border-b border-ink px-12 pt-9 pb-10';
+const DRAWING = 'col-span-2 mt-4 self-end [&_svg]:h-auto [&_svg]:max-w-full';
 
 interface OpenProps extends Omit<RedundantChoiceProps, 'chosen' | 'onChoose'> {
   readonly choice: ReleaseChoice;
+  readonly width: number;
   readonly isChosen: boolean;
   readonly onChoose: () => void;
 }
 
-function OpenCard({ beam, solution, choice, isChosen, onChoose }: OpenProps) {
+function OpenCard({ beam, solution, choice, width, isChosen, onChoose }: OpenProps) {
   const { redundants } = choice;
   const picture = useMemo(
     () => forceMethodPictures(beam, forceMethod(beam, redundants), solution).released,
@@ -73,13 +92,19 @@ function OpenCard({ beam, solution, choice, isChosen, onChoose }: OpenProps) {
         <span className="block text-schedule text-ink-2">{saysOf(beam, redundants)}</span>
       </span>
       <span className={DRAWING}>
-        <Schematic {...drawing} width={318} />
+        <Schematic {...drawing} width={width} />
       </span>
     </label>
   );
 }
 
-function BarredCard({ beam, choice }: { readonly beam: Beam; readonly choice: BarredChoice }) {
+interface BarredProps {
+  readonly beam: Beam;
+  readonly choice: BarredChoice;
+  readonly width: number;
+}
+
+function BarredCard({ beam, choice, width }: BarredProps) {
   const { redundants, reason, motion } = choice;
   return (
     <div className={`hatch-off ${CARD}`}>
@@ -94,7 +119,7 @@ function BarredCard({ beam, choice }: { readonly beam: Beam; readonly choice: Ba
       </span>
       {motion && (
         <span className={DRAWING}>
-          <MechanismSketch beam={beam} motion={motion} label="How the beam would move" width={318} />
+          <MechanismSketch beam={beam} motion={motion} label="How the beam would move" width={width} />
         </span>
       )}
     </div>

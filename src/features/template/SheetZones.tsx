@@ -41,7 +41,7 @@ export function Validity({
               <span className="sr-only">{said}</span>
             </span>
             <span>{rule.title}</span>
-            <span className="text-right whitespace-nowrap">
+            <span className="text-right whitespace-nowrap [&_.katex]:text-[1em]!">
               {rule.figure && (
                 <>
                   <Formula html={formulas[rule.figure.tex] ?? ''} /> = {rule.figure.text}
@@ -109,20 +109,22 @@ interface ClosedFormsProps {
   readonly formulas: Formulas;
 }
 
-/** The published closed forms at these values, beside which the solved figures stand. */
+/** The published closed forms at these values, beside which the solved figures stand; a source is named once for those it gives. */
 export function ClosedForms({ results, formulas }: ClosedFormsProps) {
   return (
     <ul className="border-t-2 border-ink">
-      {results.map(({ id, name, tex, formula, text, source }) => (
+      {results.map(({ id, name, tex, formula, text, source }, index) => (
         <li key={id} className="border-b border-rule py-6">
           <div className="flex items-baseline gap-10">
             <span className="min-w-0 flex-1 text-schedule text-ink-2">{name}</span>
             <b className="font-semibold whitespace-nowrap">{text}</b>
           </div>
-          <div className="overflow-x-auto overflow-y-hidden py-2">
+          <div className="overflow-x-auto overflow-y-hidden py-3 [&_.katex]:text-[1em]!">
             <Formula html={formulas[`${tex} = ${formula}`] ?? ''} />
           </div>
-          <p className="text-note text-ink-2 italic">{source}</p>
+          {source !== results[index + 1]?.source && (
+            <p className="mt-2 text-note text-ink-2 italic">{source}</p>
+          )}
         </li>
       ))}
     </ul>

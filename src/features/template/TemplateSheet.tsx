@@ -9,7 +9,7 @@ import { BeamResults } from './BeamResults';
 import { Causes } from './Causes';
 import type { TemplateEvaluation } from './evaluate';
 import { ForceMethod } from './ForceMethod';
-import { fieldFaults, toCauses, toDrawingFault } from './faults';
+import { fieldFaults, putRightFirst, toCauses, toDrawingFault } from './faults';
 import { toResultLines, toRuleLines } from './lines';
 import { ParameterFields } from './ParameterFields';
 import { dayText, type TemplatePageData } from './page';
@@ -22,7 +22,7 @@ import { useTemplatePage } from './use-template-page';
 /** A template's page: its values, the beam that follows from them, and how it is worked. */
 export function TemplateSheet({ data }: { readonly data: TemplatePageData }) {
   const page = useTemplatePage(data);
-  const action = useAction(data, page.query);
+  const action = useAction(data, page);
   const { row } = data;
   return (
     <>
@@ -116,7 +116,10 @@ function ElevationZone({ data, page }: ZoneProps) {
       {!outcome.ok && (
         <Causes
           causes={causes}
-          onPutBack={page.putBack}
+          onPutBack={(symbol) => {
+            page.putBack(symbol);
+            focusField(symbol);
+          }}
           lastGood={(symbol) => textOf(data, good.values, symbol)}
         />
       )}
@@ -139,9 +142,9 @@ function LowerZones({ data, page, action }: ZoneProps & { readonly action: Block
           note={note}
         />
       </section>
-      <RulesAndProof data={data} rested={rested} note={note} />
+      <RulesAndForms data={data} rested={rested} note={note} />
       <aside className="flex min-w-0 flex-col border-ink max-md:border-t md:border-l">
-        <Guidance template={data.template} />
+        <ProofAndNotes data={data} />
         <div className="mt-auto">
           <Block data={data} action={action} />
         </div>
@@ -157,9 +160,9 @@ interface RulesProps {
   readonly note: string | undefined;
 }
 
-/** What is said of the values, and of the template. */
-const RulesAndProof = memo(function RulesAndProof({ data, rested, note }: RulesProps) {
-  const { template, system, formulas, row } = data;
+/** What is said of the values. */
+const RulesAndForms = memo(function RulesAndForms({ data, rested, note }: RulesProps) {
+  const { template, system, formulas } = data;
   const rules = toRuleLines(template, rested.rules, system);
   const results = toResultLines(template, rested.instance, system);
   return (
@@ -167,15 +170,8 @@ const RulesAndProof = memo(function RulesAndProof({ data, rested, note }: RulesP
       <Zone letter="E" title="Validity" note={note}>
         <Validity rules={rules} formulas={formulas} />
       </Zone>
-      <Zone letter="F" title="Proof cases" note={proofNote(data.proof)}>
-        <ProofCases cases={data.proof} />
-        <p className="mt-8 text-note text-ink-2 italic">
-          Run again for this page, on engine {data.engineNow}. Revision {row.revision} was written on engine{' '}
-          {data.engineVersion}.
-        </p>
-      </Zone>
       {results.length > 0 && (
-        <Zone letter="H" title="Closed forms" note={note}>
+        <Zone letter="F" title="Closed forms" note={note}>
           <ClosedForms results={results} formulas={formulas} />
         </Zone>
       )}
@@ -183,11 +179,22 @@ const RulesAndProof = memo(function RulesAndProof({ data, rested, note }: RulesP
   );
 });
 
-const Guidance = memo(function Guidance({ template }: Pick<TemplatePageData, 'template'>) {
+/** What is said of the template, whatever the values. */
+const ProofAndNotes = memo(function ProofAndNotes({ data }: Pick<RulesProps, 'data'>) {
+  const { template, proof, row, engineNow, engineVersion } = data;
   return (
-    <Zone letter="G" title="Notes">
-      <Notes template={template} />
-    </Zone>
+    <>
+      <Zone letter="G" title="Proof cases" note={proofNote(proof)}>
+        <ProofCases cases={proof} />
+        <p className="mt-8 text-note text-ink-2 italic">
+          Run again for this page, on engine {engineNow}. Revision {row.revision} was written on engine{' '}
+          {engineVersion}.
+        </p>
+      </Zone>
+      <Zone letter="H" title="Notes">
+        <Notes template={template} />
+      </Zone>
+    </>
   );
 });
 
@@ -212,18 +219,20 @@ function Block({ data, action }: { readonly data: TemplatePageData; readonly act
   );
 }
 
-/** "Use in a job", with the values of the page, and its key. */
-function useAction({ row, barred }: TemplatePageData, query: string) {
+/** "Use in a job", with the values of the page, and its key; not with values that give no result. */
+function useAction({ row, barred, template }: TemplatePageData, { query, outcome }: Page) {
+  const why = barred ?? (outcome.ok ? null : putRightFirst(toCauses(template, outcome.errors)));
   const href = `${paths.newMemberOf(row.slug)}${query === '' ? '' : `&${query}`}`;
-  useKeys({ u: () => barred === null && location.assign(href) });
-  return barred === null
+  useKeys({ u: () => why === null && location.assign(href) });
+  return why === null
     ? { label: 'Use in a job', keyName: 'U', href }
-    : { label: 'Use in a job', reason: barred };
+    : { label: 'Use in a job', reason: why };
 }
 
-/** A figure on the drawing leads to its field. */
-function focusField(symbol: string): void {
-  const field = document.querySelector<HTMLInputElement>(`[data-symbol="${CSS.escape(symbol)}"] input`);
+/** A figure on the drawing leads to its field; null to the first. */
+function focusField(symbol: string | null): void {
+  const of = symbol === null ? '' : `="${CSS.escape(symbol)}"`;
+  const field = document.querySelector<HTMLInputElement>(`[data-symbol${of}] input`);
   field?.scrollIntoView({ block: 'nearest' });
   field?.focus();
   field?.select();

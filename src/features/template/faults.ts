@@ -51,10 +51,19 @@ export function toDrawingFault({ parameters }: Pick<Template, 'parameters'>, cau
   return undefined;
 }
 
+const NUMBERS = ['No inputs', 'One input', 'Two inputs', 'Three inputs', 'Four inputs', 'Five inputs'];
+
+/** "Two inputs". */
+function inputsIn(causes: readonly Cause[]): string {
+  const count = new Set(causes.map(({ title }) => title)).size;
+  return NUMBERS[count] ?? `${count} inputs`;
+}
+
 /** "Two inputs stop the drawing". */
 export function stopTitle(causes: readonly Cause[]): string {
-  const count = new Set(causes.map(({ title }) => title)).size;
-  const words = ['Nothing', 'One input', 'Two inputs', 'Three inputs', 'Four inputs', 'Five inputs'];
-  const said = words[count] ?? `${count} inputs`;
-  return `${said} ${count === 1 ? 'stops' : 'stop'} the drawing`;
+  const said = inputsIn(causes);
+  return `${said} ${said === NUMBERS[1] ? 'stops' : 'stop'} the drawing`;
 }
+
+/** Why nothing goes on from inputs that fail: "Two inputs to put right first". */
+export const putRightFirst = (causes: readonly Cause[]): string => `${inputsIn(causes)} to put right first`;

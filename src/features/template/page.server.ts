@@ -89,7 +89,8 @@ function formulasOf({ rules, results }: Template): Record<string, string> {
     ...rules.flatMap(({ shown }) => (shown ? [shown.tex] : [])),
     ...results.map(({ tex, formula }) => `${tex} = ${formula}`),
   ];
-  return Object.fromEntries(texts.map((tex) => [tex, setTex(tex, false)]));
+  // In line, with fractions as tall as a display's.
+  return Object.fromEntries(texts.map((tex) => [tex, setTex(`\\displaystyle ${tex}`, false)]));
 }
 
 /** The derivation at the address's values, or at the defaults where those fail. */

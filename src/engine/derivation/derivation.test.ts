@@ -333,3 +333,58 @@ describe('other beams', () => {
     expect(steps['compatibility']?.note).toBeUndefined();
   });
 });
+
+describe('letters of a simple span', () => {
+  const span = (...loads: NonNullable<BeamDocument['loads']>) =>
+    read({ length: 6, ei: 1e7, supports: [0, 6].map((at) => ({ at, kind: 'roller' as const })), loads });
+  const whole = { from: 0, to: 6, tex: 'L' };
+
+  test('a load that rises from nothing carries its letter where it is largest: wL/6, 5wL⁴/768EI', () => {
+    for (const loads of [line(0, 6, 0, 12e3), line(0, 6, 12e3, 0)]) {
+      const steps = stepsOf({ beam: span(loads), names: { lengths: [whole], loads: [{ tex: 'w' }] } });
+      expect(steps['deflection-3.000']?.symbols).toBe('\\delta=\\dfrac{5wL^4}{768EI}');
+      expect(steps['given']?.symbols).not.toContain('w');
+    }
+    const steps = stepsOf({
+      beam: span(line(0, 6, 0, 12e3)),
+      names: { lengths: [whole], loads: [{ tex: 'w' }] },
+    });
+    expect(steps['equilibrium-RA']?.symbols).toBe('R_{A}=\\dfrac{wL}{6}');
+  });
+
+  test('the whole span comes before its parts: Pb/L with b written L − a', () => {
+    const steps = stepsOf({
+      beam: span({ kind: 'point', at: 4, p: 20e3 }),
+      names: {
+        lengths: [{ from: 0, to: 4, tex: 'a' }, { from: 4, to: 6, tex: 'b' }, whole],
+        loads: [{ tex: 'P' }],
+      },
+    });
+    expect(steps['equilibrium-RA']?.symbols).toBe('R_{A}=\\dfrac{P\\,(L-a)}{L}');
+  });
+
+  test('the moment is given on both sides of a couple: M₀a/L, then −M₀b/L', () => {
+    const steps = stepsOf({
+      beam: span({ kind: 'couple', at: 2, m: 15e3 }),
+      names: { lengths: [whole, { from: 0, to: 2, tex: 'a' }], loads: [{ tex: 'M_0' }] },
+    });
+    expect(steps['moment-couple-2.000-left']).toMatchObject({
+      title: 'Moment just left of the couple at 2 m',
+      symbols: 'M_{a,\\mathrm{left}}=R_{A}a',
+      display: '5.000',
+    });
+    expect(steps['moment-couple-2.000-right']?.display).toBe('−10.00');
+  });
+
+  test('beside an end couple there is one side: −M₀ at A', () => {
+    const steps = stepsOf({
+      beam: span({ kind: 'couple', at: 0, m: 15e3 }),
+      names: { lengths: [whole], loads: [{ tex: 'M_0' }] },
+    });
+    expect(steps['moment-couple-0.000-left']).toBeUndefined();
+    expect(steps['moment-couple-0.000-right']).toMatchObject({
+      title: 'Moment just right of A',
+      display: '−15.00',
+    });
+  });
+});

@@ -3,7 +3,7 @@ import { compatibilitySteps } from './compatibility';
 import { deflectionSteps } from './determinate';
 import { nameBeam } from './named-beam';
 import { countStep, givenStep } from './opening';
-import { peakStep, reactionSteps, supportMomentSteps } from './reactions';
+import { coupleMomentSteps, peakStep, reactionSteps, supportMomentSteps } from './reactions';
 import { flexibilitySteps, gapSteps, movementsOf } from './redundants';
 import type { DerivationStep, DeriveInput } from './types';
 import { work } from './values';
@@ -32,6 +32,7 @@ export function derive(input: DeriveInput): DerivationStep[] {
       ...compatibilitySteps(worked, movements),
       ...reactionSteps(worked),
       ...supportMomentSteps(worked),
+      ...coupleMomentSteps(worked),
       ...peakStep(worked),
       ...checkStep(worked),
     ];
@@ -41,6 +42,7 @@ export function derive(input: DeriveInput): DerivationStep[] {
     return [
       ...reactionSteps(worked),
       ...supportMomentSteps(worked),
+      ...coupleMomentSteps(worked),
       ...peakStep(worked),
       ...deflectionSteps(worked),
     ];

@@ -90,6 +90,34 @@ export function supportMomentSteps(worked: Worked): DerivationStep[] {
   });
 }
 
+/** The moments on both sides of each couple that stands clear of the supports, and beside one at a free or pinned end. */
+export function coupleMomentSteps({ beam, parts }: Worked): DerivationStep[] {
+  const places = new Map(
+    beam.loads.flatMap(({ load, numeric }) =>
+      load.kind === 'couple' && numeric.kind === 'couple' ? [[numeric.at, load.at] as const] : [],
+    ),
+  );
+  return [...places].flatMap(([x, at]) => {
+    const support = beam.supports.find((each) => each.x === x);
+    const isEnd = x === 0 || x === beam.beam.length;
+    if (support && (!isEnd || support.support.rotation.kind !== 'free')) return [];
+    const sides = (['left', 'right'] as const).filter(
+      (side) => x !== (side === 'left' ? 0 : beam.beam.length),
+    );
+    return sides.map((side) => {
+      const where = support?.letter ?? texOf(at, beam.letters.symbols());
+      const name = support?.letter ?? `the couple at ${Number(x.toFixed(3))} m`;
+      return moment(
+        beam,
+        `couple-${x.toFixed(3)}-${side}`,
+        `Moment just ${side} of ${name}`,
+        `M_{${where},\\mathrm{${side}}}`,
+        momentAt(beam, parts, { x, at }, side),
+      );
+    });
+  });
+}
+
 const jumpsAt = (beam: NamedBeam, { x, support }: NamedSupport): boolean =>
   support.rotation.kind !== 'free' ||
   beam.loads.some(({ numeric }) => numeric.kind === 'couple' && numeric.at === x);

@@ -1,4 +1,5 @@
 export { type ForceMethodParts, forceMethod, releasedBeam } from './force-method';
-export { prepareBeam, solveBeam } from './solve';
+export { type PreparedBeam, prepareBeam, solveBeam } from './solve';
+export { type Span, spansOf } from './spans';
 export { stationPositions, stationsAt } from './stations';
 export type * from './types';

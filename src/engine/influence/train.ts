@@ -1,0 +1,163 @@
+import { evaluate, extremes, type Piecewise, piecewise } from '../polynomial/index';
+import { coefficientsAbout, distinct } from './pieces';
+
+/** A wheel: how far behind the front of the train, m, and its downward force, N. */
+export type Wheel = { offset: number; force: number };
+/** Where the train runs to. Its front is ahead: a wheel stands at front − offset, or at front + offset. */
+export type Direction = 'right' | 'left';
+
+/**
+ * The largest or the smallest value that a train brings about: every place of its front where it does, ascending, and
+ * where each wheel stands with the front at the first of them, null off the beam. No place: with the train off the
+ * beam the value is 0, and no position on it goes beyond that.
+ */
+export type TrainExtreme = {
+  value: number;
+  direction: Direction;
+  at: number[];
+  wheels: (number | null)[];
+};
+
+/** Places of the front nearer than this part of the train's way are one. */
+const COINCIDENT = 1e-12;
+/** What is larger by less than this part of the larger is as large. */
+const TIE = 1e-9;
+
+/** How far each wheel is to the right of the front. */
+export const placesIn = (wheels: readonly Wheel[], direction: Direction): number[] =>
+  wheels.map(({ offset }) => (direction === 'right' ? -offset : offset));
+
+/** Where each wheel stands with the front at a place, brought to a break of the line that it meets; null off the beam. */
+export function standingAt(
+  { breaks }: Piecewise,
+  places: readonly number[],
+  front: number,
+): (number | null)[] {
+  const [start, end] = [breaks[0]!, breaks.at(-1)!];
+  return places.map((place) => {
+    const x = front + place;
+    const at = breaks.find((point) => Math.abs(point - x) <= COINCIDENT * (end - start)) ?? x;
+    return start <= at && at <= end ? at : null;
+  });
+}
+
+/** Where the front changes what the train does: a wheel comes to a break of the line, or to an end of the beam. */
+export function frontBreaks({ breaks }: Piecewise, places: readonly number[]): number[] {
+  const way = breaks.at(-1)! - breaks[0]! + Math.max(...places) - Math.min(...places);
+  return distinct(
+    places.flatMap((place) => Array.from(breaks, (x) => x - place)),
+    COINCIDENT * way,
+  );
+}
+
+/**
+ * The effect of the train, Σ force · η(wheel), by the place of its front: an exact piecewise cubic, from where the first
+ * wheel comes on to where the last goes off. Wheels off the beam have no effect.
+ */
+export function trainEffect(line: Piecewise, wheels: readonly Wheel[], direction: Direction): Piecewise {
+  const places = placesIn(wheels, direction);
+  const breaks = frontBreaks(line, places);
+  const pieces = breaks.slice(1).map((to, k) => {
+    const from = breaks[k]!;
+    const sum = new Array<number>(line.degree + 1).fill(0);
+    wheels.forEach(({ force }, i) => {
+      const middle = (from + to) / 2 + places[i]!;
+      if (!isOn(line, middle)) return;
+      coefficientsAbout(line, middle, from + places[i]!).forEach((c, j) => {
+        sum[j]! += force * c;
+      });
+    });
+    return sum;
+  });
+  return piecewise(breaks, pieces);
+}
+
+const isOn = ({ breaks }: Piecewise, x: number): boolean => breaks[0]! <= x && x <= breaks.at(-1)!;
+
+/**
+ * The largest and the smallest effect of the train over all its positions, in the directions it may run. Exact: between
+ * two places where a wheel meets a break the effect is a cubic, whose turning points are roots of its derivative.
+ */
+export function worstTrain(
+  line: Piecewise,
+  wheels: readonly Wheel[],
+  directions: readonly Direction[],
+): { max: TrainExtreme; min: TrainExtreme } {
+  const found = directions.map((direction) => {
+    const { max, min } = extremes(trainEffect(line, wheels, direction));
+    const meetings = jumpMeetings(line, wheels, direction);
+    return {
+      max: placed(line, wheels, direction, [max, ...meetings], 1),
+      min: placed(line, wheels, direction, [min, ...meetings], -1),
+    };
+  });
+  return {
+    max: worst(
+      found.map(({ max }) => max),
+      1,
+    ),
+    min: worst(
+      found.map(({ min }) => min),
+      -1,
+    ),
+  };
+}
+
+type Found = { value: number; at: number[] };
+
+function placed(
+  line: Piecewise,
+  wheels: readonly Wheel[],
+  direction: Direction,
+  found: readonly Found[],
+  sense: 1 | -1,
+): TrainExtreme {
+  const { value, at } = worst(found, sense);
+  const [front] = at;
+  if (front === undefined || sense * value <= 0) {
+    return { value: 0, direction, at: [], wheels: wheels.map(() => null) };
+  }
+  const stands = standings(line, wheels, direction, front);
+  const held = stands.find((one) => !isWorse(one.value, value, 1) && !isWorse(one.value, value, -1));
+  return { value, direction, at, wheels: (held ?? stands[0]!).wheels };
+}
+
+const isWorse = (a: number, b: number, sense: 1 | -1): boolean =>
+  sense * (a - b) > TIE * Math.max(Math.abs(a), Math.abs(b));
+
+/** The first of those that are as bad as each other. */
+const worst = <T extends { value: number }>(found: readonly T[], sense: 1 | -1): T =>
+  found.reduce((a, b) => (isWorse(b.value, a.value, sense) ? b : a));
+
+/** A wheel that stands where the line jumps may count on either side of it, while another stands at an end of the beam. */
+function jumpMeetings(line: Piecewise, wheels: readonly Wheel[], direction: Direction): Found[] {
+  const jumps = Array.from(line.breaks).filter((x, k, { length }) => {
+    const [left, right] = evaluate(line, x);
+    return k === 0 || k === length - 1 ? left !== 0 : left !== right;
+  });
+  return placesIn(wheels, direction).flatMap((place) =>
+    jumps.flatMap((x) =>
+      standings(line, wheels, direction, x - place).map(({ value }) => ({ value, at: [x - place] })),
+    ),
+  );
+}
+
+type Standing = { value: number; wheels: (number | null)[] };
+
+/** The train with its front at a place: standing there, a wheel at a jump counted at its left or right; a hair before it, and a hair beyond. */
+function standings(
+  line: Piecewise,
+  wheels: readonly Wheel[],
+  direction: Direction,
+  front: number,
+): Standing[] {
+  const [start, end] = [line.breaks[0]!, line.breaks.at(-1)!];
+  const places = standingAt(line, placesIn(wheels, direction), front);
+  const stand = (side: 0 | 1, holds: (x: number) => boolean): Standing => {
+    const on = places.map((x) => (x !== null && holds(x) ? x : null));
+    const values = on.map((x, i) => (x === null ? 0 : wheels[i]!.force * evaluate(line, x)[side]));
+    return { value: values.reduce((sum, value) => sum + value, 0), wheels: on };
+  };
+  const always = () => true;
+  return [stand(0, always), stand(1, always), stand(0, (x) => x > start), stand(1, (x) => x < end)];
+}

@@ -376,14 +376,14 @@ describe('letters of a simple span', () => {
     expect(steps['moment-couple-2.000-right']?.display).toBe('−10.00');
   });
 
-  test('beside an end couple there is one side: −M₀ at A', () => {
+  test('a couple at a pinned end is the moment there: −M₀ at A', () => {
     const steps = stepsOf({
       beam: span({ kind: 'couple', at: 0, m: 15e3 }),
       names: { lengths: [whole], loads: [{ tex: 'M_0' }] },
     });
-    expect(steps['moment-couple-0.000-left']).toBeUndefined();
-    expect(steps['moment-couple-0.000-right']).toMatchObject({
-      title: 'Moment just right of A',
+    expect(steps['moment-couple-0.000']).toMatchObject({
+      title: 'Moment at A: the couple put on there',
+      symbols: 'M_{A}=-M_0',
       display: '−15.00',
     });
   });

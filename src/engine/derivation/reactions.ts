@@ -1,4 +1,4 @@
-import { type Expression, texOf } from '../chart/index';
+import { add, type Expression, negate, texOf, ZERO } from '../chart/index';
 import { evaluate } from '../polynomial/index';
 import type { NamedBeam, NamedSupport } from './named-beam';
 import { type Equilibrium, equilibrium, momentAt } from './statics';
@@ -90,31 +90,34 @@ export function supportMomentSteps(worked: Worked): DerivationStep[] {
   });
 }
 
-/** The moments on both sides of each couple that stands clear of the supports, and beside one at a free or pinned end. */
+/** The moments on both sides of each couple that stands clear of the supports, and at an end that one is put on. */
 export function coupleMomentSteps({ beam, parts }: Worked): DerivationStep[] {
-  const places = new Map(
-    beam.loads.flatMap(({ load, numeric }) =>
-      load.kind === 'couple' && numeric.kind === 'couple' ? [[numeric.at, load.at] as const] : [],
-    ),
-  );
-  return [...places].flatMap(([x, at]) => {
+  const places = new Map<number, { at: Expression; m: Expression }>();
+  for (const { load, numeric } of beam.loads) {
+    if (load.kind !== 'couple' || numeric.kind !== 'couple') continue;
+    const { at, m } = places.get(numeric.at) ?? { at: load.at, m: ZERO };
+    places.set(numeric.at, { at, m: add(m, load.m) });
+  }
+  return [...places].flatMap(([x, { at, m }]) => {
     const support = beam.supports.find((each) => each.x === x);
-    const isEnd = x === 0 || x === beam.beam.length;
-    if (support && (!isEnd || support.support.rotation.kind !== 'free')) return [];
-    const sides = (['left', 'right'] as const).filter(
-      (side) => x !== (side === 'left' ? 0 : beam.beam.length),
-    );
-    return sides.map((side) => {
-      const where = support?.letter ?? texOf(at, beam.letters.symbols());
-      const name = support?.letter ?? `the couple at ${Number(x.toFixed(3))} m`;
-      return moment(
+    const where = support?.letter ?? texOf(at, beam.letters.symbols());
+    const id = `couple-${x.toFixed(3)}`;
+    if (x === 0 || x === beam.beam.length) {
+      if (support && support.support.rotation.kind !== 'free') return [];
+      const name = support?.letter ?? `the ${x === 0 ? 'left' : 'right'} end`;
+      const sagging = x === 0 ? negate(m) : m;
+      return [moment(beam, id, `Moment at ${name}: the couple put on there`, `M_{${where}}`, sagging)];
+    }
+    if (support) return [];
+    return (['left', 'right'] as const).map((side) =>
+      moment(
         beam,
-        `couple-${x.toFixed(3)}-${side}`,
-        `Moment just ${side} of ${name}`,
+        `${id}-${side}`,
+        `Moment just ${side} of the couple at ${Number(x.toFixed(3))} m`,
         `M_{${where},\\mathrm{${side}}}`,
         momentAt(beam, parts, { x, at }, side),
-      );
-    });
+      ),
+    );
   });
 }
 

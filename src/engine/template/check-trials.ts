@@ -51,7 +51,8 @@ function defaultFaults(template: Template, values: Values): TemplateFault[] {
   if (!solving.ok) return solving.faults;
   const others = variants(template, values).flatMap((variant) => {
     const other = solve(template, variant, ei);
-    return other.ok ? [] : other.faults;
+    // A named value that a block rule refuses is there to be refused in words.
+    return other.ok ? [] : other.faults.filter(({ code }) => code !== 'rule_broken');
   });
   const outcomes = judgeRules(template, scopeOf(template, values, ei), { solution: solving.solution });
   const broken = outcomes.flatMap(({ state, severity, message }, index): TemplateFault[] =>

@@ -12,6 +12,14 @@ const server = {
 export default defineConfig({
   resolve: { alias },
   test: {
+    // npm run coverage: of the engine, which is to be beyond doubt.
+    coverage: {
+      provider: 'v8',
+      include: ['src/engine/**/*.ts'],
+      exclude: ['**/*.test.ts'],
+      reporter: ['text', 'json-summary'],
+      thresholds: { lines: 95, branches: 95 },
+    },
     projects: [
       {
         resolve: { alias },

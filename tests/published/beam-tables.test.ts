@@ -1,10 +1,13 @@
 import { describe, expect, test } from 'vitest';
 import { solveBeam } from '@/engine/beam/index';
-import { type BeamDocument, readBeam } from '@/engine/model/index';
+import { influenceLine } from '@/engine/influence/index';
+import type { BeamDocument } from '@/engine/model/index';
+import { evaluate } from '@/engine/polynomial/index';
 import { isProven, proveSolution } from '@/engine/proof/index';
 import { expectPrinted } from '../support/printed';
 import { type PrintedBeamValue, printedBeamValues } from '../support/printed-tables';
-import { quantityOf } from '../support/printed-value';
+import { ordinateLine, quantityOf } from '../support/printed-value';
+import { stableBeam } from '../support/stable-beam';
 
 const values = printedBeamValues();
 /** Values printed of one beam stand together. */
@@ -14,19 +17,29 @@ for (const value of values) beams.set(value.document, [...(beams.get(value.docum
 describe.each([...beams].map(([document, printed]) => ({ document, printed, first: printed[0]! })))(
   '$first.source, $first.title',
   ({ document, printed }) => {
-    const reading = readBeam(document);
-    if (!reading.ok) throw new Error(JSON.stringify(reading.faults));
-    const solution = solveBeam(reading.value);
+    const beam = stableBeam(document);
+    const solution = solveBeam(beam);
 
     test('is proven', () => {
-      expect(isProven(proveSolution(reading.value, solution), reading.value)).toBe(true);
+      expect(isProven(proveSolution(beam, solution), beam)).toBe(true);
     });
 
     test.each(printed)('$quantity is printed $printed', (value) => {
-      expectPrinted(quantityOf(value.quantity, reading.value, solution), value.printed, value.units);
+      expectPrinted(quantityOf(value.quantity, beam, solution), value.printed, value.units);
     });
   },
 );
+
+describe('influence lines', () => {
+  test.each(values.filter(({ family }) => family === 'influence ordinates'))(
+    '$title is printed $printed',
+    ({ document, quantity, printed }) => {
+      const ordinate = ordinateLine(stableBeam(document), quantity);
+      const { line } = influenceLine(ordinate.unloaded, ordinate.quantity);
+      expectPrinted(evaluate(line, ordinate.at)[0], printed);
+    },
+  );
+});
 
 test('the tables hold as many values of each family as were typed', () => {
   const counts: Record<string, number> = {};

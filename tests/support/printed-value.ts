@@ -1,4 +1,5 @@
 import type { Solution } from '@/engine/beam/index';
+import type { InfluenceQuantity } from '@/engine/influence/index';
 import type { Beam } from '@/engine/model/index';
 import { evaluate, extremes, type Piecewise, piecewise } from '@/engine/polynomial/index';
 
@@ -67,6 +68,26 @@ export function quantityOf(quantity: string, beam: Beam, solution: Solution): nu
       throw new Error(`"${quantity}" is no quantity`);
   }
 }
+
+/**
+ * The influence line that an ordinate is of, where the beam's one load is the unit force: RA, RB … a vertical reaction,
+ * MA, MB … the moment over a support, "M at x" that at a place.
+ */
+export function ordinateLine({ loads, ...beam }: Beam, quantity: string): OrdinateLine {
+  const [load] = loads;
+  if (load?.kind !== 'point') throw new Error('an ordinate is of one unit force');
+  const support = 'ABCDEF'.indexOf(quantity[1] ?? '');
+  const at = support < 0 ? Number(quantity.replace('M at ', '')) : beam.supports[support]!.at;
+  return {
+    unloaded: { ...beam, loads: [] },
+    at: load.at,
+    quantity: quantity.startsWith('R')
+      ? { kind: 'reaction', support, component: 'vertical' }
+      : { kind: 'moment', at, side: 'left' },
+  };
+}
+
+type OrdinateLine = { unloaded: Beam; at: number; quantity: InfluenceQuantity };
 
 /** 0 for the first of 1, 2 … or A, B … */
 const placeOf = (mark: string): number => (mark < 'A' ? Number(mark) - 1 : mark.charCodeAt(0) - 65);

@@ -363,6 +363,17 @@ describe('letters of a simple span', () => {
     expect(steps['equilibrium-RA']?.symbols).toBe('R_{A}=\\dfrac{P\\,(L-a)}{L}');
   });
 
+  test('a load at midspan stands at L/2: PL/4, PL³/48EI', () => {
+    const steps = stepsOf({
+      beam: span({ kind: 'point', at: 3, p: 20e3 }),
+      names: { lengths: [whole], loads: [{ tex: 'P' }] },
+    });
+    expect(steps['equilibrium-RA']?.symbols).toBe('R_{A}=\\dfrac{P}{2}');
+    expect(steps['largest-moment']?.symbols).toBe('M(\\tfrac{L}{2})=\\dfrac{R_{A}L}{2}');
+    expect(steps['deflection-3.000']?.symbols).toBe('\\delta=\\dfrac{PL^3}{48EI}');
+    expect(steps['given']?.symbols).not.toContain('a_1');
+  });
+
   test('the moment is given on both sides of a couple: M₀a/L, then −M₀b/L', () => {
     const steps = stepsOf({
       beam: span({ kind: 'couple', at: 2, m: 15e3 }),

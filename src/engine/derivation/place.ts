@@ -1,4 +1,4 @@
-import { add, type Expression, subtract, ZERO } from '../chart/index';
+import { add, constant, type Expression, expand, multiply, subtract, ZERO } from '../chart/index';
 import type { Letters } from './symbols';
 import type { NamedLength } from './types';
 
@@ -30,12 +30,20 @@ export class Places {
     return this.remember(x, add(from, this.letters.number('L', x - before, 'length')), true);
   }
 
-  /** The position of anything else: its distance from the support (or the end) at its left gets a letter. */
+  /**
+   * The position of anything else: halfway between supports and ends it is half of that length, and elsewhere its
+   * distance from the one at its left gets a letter.
+   */
   load(x: number): Expression {
     const found = this.find(x);
     if (found) return found;
-    const starts = this.known.filter((place) => place.isStart && place.x < x);
-    const from = starts.reduce((last, place) => (place.x > last.x ? place : last));
+    const starts = this.known.filter(({ isStart }) => isStart).sort((a, b) => a.x - b.x);
+    const from = starts.findLast((place) => place.x < x)!;
+    const next = starts.find((place) => place.x > x);
+    if (next && this.isSame(x - from.x, next.x - x)) {
+      const half = multiply(constant({ n: 1, d: 2 }), expand(subtract(next.at, from.at)));
+      return this.remember(x, expand(add(from.at, half)));
+    }
     return this.remember(x, add(from.at, this.letters.number('a', x - from.x, 'length')));
   }
 

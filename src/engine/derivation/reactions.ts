@@ -100,7 +100,7 @@ export function coupleMomentSteps({ beam, parts }: Worked): DerivationStep[] {
   }
   return [...places].flatMap(([x, { at, m }]) => {
     const support = beam.supports.find((each) => each.x === x);
-    const where = support?.letter ?? texOf(at, beam.letters.symbols());
+    const where = support?.letter ?? nameOf(beam, at);
     const id = `couple-${x.toFixed(3)}`;
     if (x === 0 || x === beam.beam.length) {
       if (support && support.support.rotation.kind !== 'free') return [];
@@ -142,6 +142,10 @@ function moment(
   });
 }
 
+/** A place as it stands within brackets or below the line. */
+const nameOf = (beam: NamedBeam, place: Expression): string =>
+  texOf(place, beam.letters.symbols()).replaceAll('\\dfrac', '\\tfrac');
+
 /** The largest sagging moment, where it is within a span: where the shear is zero. */
 export function peakStep(worked: Worked): DerivationStep[] {
   const { beam, solution } = worked;
@@ -151,7 +155,7 @@ export function peakStep(worked: Worked): DerivationStep[] {
   if (value <= 0 || x === 0 || x === beam.beam.length || !isPlain) return [];
   if (beam.loads.some(({ numeric }) => numeric.kind === 'couple' && numeric.at === x)) return [];
   const place = beam.places.find(x) ?? beam.places.give(x, beam.letters.define('x_m', x, 'length'));
-  const where = texOf(place, beam.letters.symbols());
+  const where = nameOf(beam, place);
   return [
     calculate(beam.letters, {
       id: 'largest-moment',

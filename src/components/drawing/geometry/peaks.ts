@@ -79,8 +79,8 @@ function fromExtreme(curve: Piecewise, extreme: Extreme, rank: number): Peak[] {
   const { at, value } = extreme;
   const [first, last] = [at[0], at.at(-1)];
   if (first === undefined || last === undefined) return [];
-  if (at.length === 2 && isConstant(curve, first, last, value))
-    return [{ kind: 'extreme', x: first, to: last, value, rank }];
+  const holds = at.length > 1 && at.slice(1).every((x, i) => isConstant(curve, at[i] ?? first, x, value));
+  if (holds) return [{ kind: 'extreme', x: first, to: last, value, rank }];
   return at.map((x, i) => ({ kind: 'extreme', x, value, rank: i === 0 ? rank : rank + 2 }));
 }
 
@@ -98,7 +98,7 @@ export function peaksOf(
   const size = Math.abs(governing.value);
   if (!(size > 0)) return [];
   const worth = (value: number, part: number) => Math.abs(value) > size * part;
-  const outward = other === min ? other.value < 0 : other.value > 0;
+  const outward = other.value * governing.value < 0;
   const peaks = [
     ...fromExtreme(curve, governing, 0),
     ...(outward && worth(other.value, 1e-6) ? fromExtreme(curve, other, 1) : []),

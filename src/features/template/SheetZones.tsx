@@ -70,7 +70,9 @@ export const ProofCases = memo(function ProofCases({ cases }: { readonly cases: 
               <span className="sr-only">{ok ? 'agrees' : 'disagrees'}</span>
             </span>
             <span className="min-w-0 flex-1">{name}</span>
-            <span className="text-note whitespace-nowrap text-ink-2">{checks.length} figures</span>
+            <span className="text-note whitespace-nowrap text-ink-2">
+              {checks.length} {checks.length === 1 ? 'figure' : 'figures'}
+            </span>
           </summary>
           {fault && <p className="text-note text-error">{fault}</p>}
           <table className="schedule mb-6">
@@ -167,7 +169,7 @@ export const Notes = memo(function Notes({ template }: { readonly template: Temp
 });
 
 /** "R_B" in running text with its letter lowered. */
-const lowered = (text: string): string => text.replaceAll(/(?<=[A-Za-zθδ])_([A-Za-z0-9]+)/g, '_{$1}');
+const lowered = (text: string): string => text.replaceAll(/(?<=[A-Za-zθδ])_([A-Za-z0-9θ]+)/g, '_{$1}');
 
 function NoteList({ title, items }: { readonly title: string; readonly items: readonly string[] }) {
   return (

@@ -1,14 +1,5 @@
 import { z } from 'zod';
-
-/** Load groups a member's loads may belong to, in the order they stack on a drawing and in a table. */
-export const LOAD_GROUPS = ['G', 'Q', 'S', 'W'] as const;
-export type LoadGroup = (typeof LOAD_GROUPS)[number];
-export const LOAD_GROUP_NAMES: Record<LoadGroup, string> = {
-  G: 'permanent',
-  Q: 'imposed',
-  S: 'snow',
-  W: 'wind',
-};
+import { LOAD_GROUPS } from '../combination/index';
 
 const factors = z.partialRecord(z.enum(LOAD_GROUPS), z.number());
 const combination = z.strictObject({ name: z.string().min(1), factors });
@@ -58,5 +49,4 @@ export const criteriaDocument = z.strictObject({
   not_checked: z.array(z.string().min(1)).min(1),
 });
 export type Criteria = z.infer<typeof criteriaDocument>;
-export type Combination = z.infer<typeof combination>;
 export type DeflectionLimit = z.infer<typeof deflectionLimit>;

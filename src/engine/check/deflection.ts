@@ -1,8 +1,9 @@
+import type { Region } from '../combination/index';
 import { add, evaluate, extremes, type Piecewise, piecewise } from '../polynomial/index';
 import type { UnitSystemName } from '../quantity/index';
 import type { DeflectionLimit } from './criteria';
 import { texFigure } from './figure';
-import type { CheckRow, Region, ServiceArrangement } from './types';
+import type { CheckRow, ServiceArrangement } from './types';
 
 /** The pieces of p between two of its breaks. */
 function restrict(p: Piecewise, from: number, to: number): Piecewise {

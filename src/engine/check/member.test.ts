@@ -1,8 +1,9 @@
 import { readFileSync } from 'node:fs';
 import { describe, expect, test } from 'vitest';
 import { prepareBeam } from '../beam/index';
+import { actingCombinations, factoredLoads, regionsOf } from '../combination/index';
 import { type Load, readBeam } from '../model/index';
-import { actingCombinations, checkMember, criteriaDocument, factoredLoads, regionsOf } from './index';
+import { checkMember, criteriaDocument } from './index';
 
 const criteriaOf = (slug: string) =>
   criteriaDocument.parse(JSON.parse(readFileSync(`data/criteria/${slug}.json`, 'utf8')));

@@ -1,9 +1,10 @@
+import { regionsOf } from '../combination/index';
 import type { Beam } from '../model/index';
 import { formatFor, type UnitSystemName } from '../quantity/index';
 import type { Criteria } from './criteria';
 import { deflectionChecks } from './deflection';
 import { bendingCheck, shearCheck } from './elastic';
-import { placeOf, regionsOf } from './regions';
+import { placeOf } from './place';
 import type { Arrangement, ElasticSection, MemberChecks, ServiceArrangement } from './types';
 import { upliftFindings } from './uplift';
 

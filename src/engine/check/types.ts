@@ -1,6 +1,7 @@
 import type { Solution } from '../beam/index';
+import type { Combination } from '../combination/index';
 import type { DimensionName } from '../quantity/index';
-import type { Combination, DeflectionLimit } from './criteria';
+import type { DeflectionLimit } from './criteria';
 
 /** One combination's loads, all at once, solved as one beam: a real load arrangement, never an envelope. */
 export type Arrangement = { readonly combination: Combination; readonly solution: Solution };
@@ -16,15 +17,6 @@ export type ElasticSection = {
   readonly bendingStrength: number;
   /** Yield strength of steel in shear, f_y/√3; f_v,k or F_v of timber. */
   readonly shearStrength: number;
-};
-
-/** A stretch of the beam between two vertical supports, or beyond the last: lengths and positions in m. */
-export type Region = {
-  readonly kind: 'span' | 'overhang';
-  readonly from: number;
-  readonly to: number;
-  /** "span A–B", "overhang beyond B". */
-  readonly name: string;
 };
 
 export type CheckKind = 'bending' | 'shear' | 'deflection';

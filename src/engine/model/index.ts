@@ -1,5 +1,5 @@
 export { type LetteredSupport, letteredSupports, supportLetter } from './letters';
-export { releaseMechanism } from './motion';
+export { describeMotion, releaseMechanism } from './motion';
 export { readBeam } from './read';
 export { COINCIDENT } from './reader';
 export {
@@ -11,4 +11,4 @@ export {
 } from './redundants';
 export { findMotion, frameOf, type MovingPart, riseOf } from './stability';
 export * from './types';
-export { nameRedundant } from './words';
+export { nameRedundant, nameSupport } from './words';

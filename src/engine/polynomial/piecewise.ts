@@ -14,7 +14,7 @@ export function piecewise(breaks: ArrayLike<number>, pieces: readonly (readonly 
 }
 
 /** How many pieces there are. */
-export const pieceCount = (p: Piecewise): number => p.breaks.length - 1;
+export const pieceCount = (p: Pick<Piecewise, 'breaks'>): number => p.breaks.length - 1;
 
 /** Value of piece k at s from its left end (Horner). */
 export function evaluatePiece(p: Piecewise, k: number, s: number): number {
@@ -25,7 +25,7 @@ export function evaluatePiece(p: Piecewise, k: number, s: number): number {
 }
 
 /** The piece that holds x; at a break the one to its right. */
-export function pieceAt(p: Piecewise, x: number): number {
+export function pieceAt(p: Pick<Piecewise, 'breaks'>, x: number): number {
   let low = 0;
   let high = pieceCount(p) - 1;
   while (low < high) {

@@ -1,4 +1,4 @@
-import { LOAD_GROUP_NAMES } from '../check/index';
+import { LOAD_GROUP_NAMES } from '../combination/index';
 import {
   type Parameter,
   type QuantityParameter,

@@ -1,5 +1,6 @@
 import type { Extremes, Reaction, Solution } from '../beam/index';
-import type { CheckRow, Combination, Finding } from '../check/index';
+import type { CheckRow, Finding } from '../check/index';
+import type { Combination } from '../combination/index';
 import type { DerivationStep } from '../derivation/index';
 import type { Beam } from '../model/index';
 import type { UnitSystemName } from '../quantity/index';

@@ -2,7 +2,7 @@ import { Button } from '@/components/ui/Button';
 import { Notice } from '@/components/ui/Notice';
 import { SheetHead } from '@/components/ui/SheetHead';
 import { ZoneHeading } from '@/components/ui/ZoneHeading';
-import { LOAD_GROUP_NAMES, LOAD_GROUPS } from '@/engine/check';
+import { LOAD_GROUP_NAMES, LOAD_GROUPS } from '@/engine/combination';
 import type { Redundant } from '@/engine/model';
 import { formatUtilisation } from '@/engine/quantity';
 import { type Cause, stopTitle, toCauses } from '@/features/template/faults';

@@ -1,23 +1,20 @@
 import { prepareBeam, type Solution } from '@/engine/beam';
 import {
   type Arrangement,
-  actingCombinations,
   type Criteria,
   checkMember,
-  factoredLoads,
-  LOAD_GROUPS,
   type MemberChecks,
   type ServiceArrangement,
 } from '@/engine/check';
-import { SingularMatrix } from '@/engine/linear';
 import {
-  type Beam,
-  checkRedundants,
-  type Load,
-  type Redundant,
-  type Restraint,
-  readBeam,
-} from '@/engine/model';
+  actingCombinations,
+  factoredLoads,
+  groupsOf,
+  stillBeam,
+  supportsMove,
+} from '@/engine/combination';
+import { SingularMatrix } from '@/engine/linear';
+import { type Beam, checkRedundants, type Load, type Redundant, readBeam } from '@/engine/model';
 import { isProven, proveSolution } from '@/engine/proof';
 import type { UnitSystemName } from '@/engine/quantity';
 import type { Material } from '@/engine/section';
@@ -144,11 +141,11 @@ function evaluateBeam(
   const proofs: { beam: Beam; solution: Solution }[] = [];
   const solve = (loads: readonly Load[], movements: boolean): Solution => {
     const solution = prepared.solve(loads, { movements });
-    proofs.push({ beam: { ...(movements ? beam : still(beam)), loads }, solution });
+    proofs.push({ beam: { ...(movements ? beam : stillBeam(beam)), loads }, solution });
     return solution;
   };
   const total = solve(beam.loads, true);
-  const present = groupsOf(beam);
+  const present = groupsOf(beam.loads);
   const groups = [
     ...present.map((group) => ({
       group,
@@ -157,7 +154,7 @@ function evaluateBeam(
         false,
       ),
     })),
-    ...(moves(beam) ? [{ group: MOVEMENTS, solution: solve([], true) }] : []),
+    ...(supportsMove(beam) ? [{ group: MOVEMENTS, solution: solve([], true) }] : []),
   ];
   const arrangementsOf = (combinations: Criteria['strength']['combinations']): Arrangement[] =>
     actingCombinations(combinations, present, criteria?.letters).map((combination) => ({
@@ -187,31 +184,6 @@ function evaluateBeam(
     proof: worstOf(proofs),
   };
 }
-
-/** Known groups first, in their usual order, then the practice's own by name. */
-function groupsOf({ loads }: Beam): string[] {
-  const known: readonly string[] = LOAD_GROUPS;
-  const rank = (group: string) => (known.includes(group) ? known.indexOf(group) : known.length);
-  const present = new Set(loads.flatMap(({ group }) => (group === undefined ? [] : [group])));
-  return [...present].sort((a, b) => rank(a) - rank(b) || a.localeCompare(b));
-}
-
-const movementOf = (restraint: Restraint): number => (restraint.kind === 'free' ? 0 : restraint.movement);
-const moves = ({ supports }: Beam): boolean =>
-  supports.some(({ vertical, rotation }) => movementOf(vertical) !== 0 || movementOf(rotation) !== 0);
-
-/** The same beam on supports that stay where they are. */
-const still = (beam: Beam): Beam => ({
-  ...beam,
-  supports: beam.supports.map((support) => ({
-    ...support,
-    vertical: unmoved(support.vertical),
-    rotation: unmoved(support.rotation),
-  })),
-});
-
-const unmoved = (restraint: Restraint): Restraint =>
-  restraint.kind === 'free' ? restraint : { ...restraint, movement: 0 };
 
 function worstOf(proofs: readonly { beam: Beam; solution: Solution }[]): ProofLine {
   const each = proofs.map(({ beam, solution }) => ({ beam, proof: proveSolution(beam, solution) }));

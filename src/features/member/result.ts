@@ -1,6 +1,7 @@
 import { z } from 'zod';
 import type { Reaction, Solution } from '@/engine/beam';
-import type { CheckRow, Combination, DeflectionLimit, Finding } from '@/engine/check';
+import type { CheckRow, DeflectionLimit, Finding } from '@/engine/check';
+import type { Combination } from '@/engine/combination';
 import type { DerivationStep } from '@/engine/derivation';
 import type { Beam } from '@/engine/model';
 import { type Piecewise, piecewise } from '@/engine/polynomial';

@@ -1,6 +1,6 @@
 /** Which loads the member's drawing shows: all of them unfactored, a group alone, or a combination at once. */
 import type { Solution } from '@/engine/beam';
-import { factoredLoads, LOAD_GROUP_NAMES, LOAD_GROUPS } from '@/engine/check';
+import { factoredLoads, LOAD_GROUP_NAMES, LOAD_GROUPS } from '@/engine/combination';
 import type { Beam, Load } from '@/engine/model';
 import type { NamedLoad } from '@/engine/template';
 import { type MemberEvaluation, MOVEMENTS } from './evaluate';

@@ -1,8 +1,19 @@
 import type { Load } from '../model/index';
-import type { Combination, Criteria } from './criteria';
 
-const factorOf = ({ factors }: Combination, group: string): number =>
-  Object.entries(factors).find(([name]) => name === group)?.[1] ?? 0;
+/** Factors by load group; a group without one does not act. */
+export type Combination = {
+  readonly name: string;
+  readonly factors: Readonly<Partial<Record<string, number>>>;
+};
+
+/** What groups are called in the names of combinations, where not by their own letters: D and L for G and Q. */
+export type GroupLetters = Readonly<Partial<Record<string, string>>>;
+
+const own = <T>(record: Readonly<Partial<Record<string, T>>>, key: string): T | undefined =>
+  Object.hasOwn(record, key) ? record[key] : undefined;
+
+/** The factor of a group in a combination; 0 where it does not act. */
+export const factorOf = ({ factors }: Combination, group: string): number => own(factors, group) ?? 0;
 
 /** The loads of a combination: each times its group's factor; a group without one does not act. */
 export const factoredLoads = (loads: readonly Load[], combination: Combination): Load[] =>
@@ -25,12 +36,10 @@ function scaled(load: Load, factor: number): Load {
 }
 
 /** "1.35 G + 1.5 Q": the groups that act, a factor of 1 left out. */
-function nameOf(factors: readonly (readonly [string, number])[], letters: Criteria['letters']): string {
-  const letterOf = (group: string) => Object.entries(letters ?? {}).find(([name]) => name === group)?.[1];
-  return factors
-    .map(([group, factor]) => `${factor === 1 ? '' : `${factor} `}${letterOf(group) ?? group}`)
+const nameOf = (factors: readonly (readonly [string, number])[], letters: GroupLetters): string =>
+  factors
+    .map(([group, factor]) => `${factor === 1 ? '' : `${factor} `}${own(letters, group) ?? group}`)
     .join(' + ');
-}
 
 /**
  * The combinations that differ on these groups, each named by the groups that act: with no snow on the beam,
@@ -39,7 +48,7 @@ function nameOf(factors: readonly (readonly [string, number])[], letters: Criter
 export function actingCombinations(
   combinations: readonly Combination[],
   groups: readonly string[],
-  letters: Criteria['letters'],
+  letters: GroupLetters = {},
 ): Combination[] {
   const distinct = new Map<string, Combination>();
   for (const combination of combinations) {

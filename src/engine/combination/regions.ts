@@ -1,8 +1,19 @@
 import { type Beam, letteredSupports } from '../model/index';
-import type { Region } from './types';
 
-/** The spans between vertical supports and the overhangs beyond them, from the left. An overhang of no length is none. */
-export function regionsOf(beam: Beam): Region[] {
+/** A stretch of the beam between two vertical supports, or beyond the last: lengths and positions in m. */
+export type Region = {
+  readonly kind: 'span' | 'overhang';
+  readonly from: number;
+  readonly to: number;
+  /** "span A–B", "overhang beyond B". */
+  readonly name: string;
+};
+
+/**
+ * The spans between vertical supports and the overhangs beyond them, from the left. An overhang of no length is none.
+ * They are the spans that loads are patterned by as well.
+ */
+export function regionsOf(beam: Pick<Beam, 'length' | 'supports'>): Region[] {
   const held = letteredSupports(beam)
     .filter(({ support }) => support.vertical.kind !== 'free')
     .map(({ support: { at }, letter }) => ({ at, letter }));
@@ -16,10 +27,4 @@ export function regionsOf(beam: Beam): Region[] {
     return { kind: 'span', from: left.at, to: right.at, name: `span ${left.letter}–${right.letter}` };
   });
   return [...overhangs(0, first.at, first.letter), ...spans, ...overhangs(last.at, beam.length, last.letter)];
-}
-
-/** "at A", "at 2.860 m": a position in the words of the drawing. */
-export function placeOf(beam: Beam, x: number, position: (x: number) => string): string {
-  const found = letteredSupports(beam).find(({ support }) => Math.abs(support.at - x) <= 1e-9 * beam.length);
-  return found ? `at ${found.letter}` : `at ${position(x)}`;
 }

@@ -1,0 +1,11 @@
+export {
+  actingCombinations,
+  type Combination,
+  factoredLoads,
+  factorOf,
+  type GroupLetters,
+} from './combine';
+export { cutLoads, type SpanLoad } from './cut';
+export { groupsOf, LOAD_GROUP_NAMES, LOAD_GROUPS, type LoadGroup } from './groups';
+export { stillBeam, supportsMove } from './movements';
+export { type Region, regionsOf } from './regions';

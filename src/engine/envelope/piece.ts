@@ -1,0 +1,110 @@
+import { type Cases, type Sense, shareOf } from './cases';
+import type { Curves } from './curves';
+import { horner, UnitRoots } from './roots';
+
+const WIDTH = 6; // coefficients of a fifth-degree polynomial
+
+/**
+ * The largest value of an envelope within one piece, exactly. Between the zeros of the spans' shares the same spans
+ * are adverse throughout, so that the envelope is one polynomial there, largest at its ends or where its slope is zero.
+ * Answers in its fields.
+ */
+export class PieceMaximum {
+  value = 0;
+  t = 0;
+  private readonly roots = new UnitRoots();
+  /** What is adverse throughout the piece, and what is so between two neighbouring zeros, with its slope. */
+  private readonly steady = new Float64Array(WIDTH);
+  private readonly sum = new Float64Array(WIDTH);
+  private readonly slope = new Float64Array(WIDTH);
+  /** The shares that change their sign within the piece, and how many there are. */
+  private readonly changing: Float64Array[];
+  private changes = 0;
+  private readonly cuts: Float64Array;
+
+  constructor(
+    private readonly curves: Curves,
+    private readonly cases: Cases,
+    /** A share that stays within this of nothing is rounding's. */
+    private readonly nothing: number,
+  ) {
+    this.changing = cases.spans.map(() => new Float64Array(WIDTH));
+    this.cuts = new Float64Array(2 + cases.spans.length * (WIDTH - 1));
+  }
+
+  /** The largest of sense · envelope of a combination within piece k. */
+  find(k: number, combination: number, sense: Sense): void {
+    this.steady.fill(0);
+    this.changes = 0;
+    this.addShare(0, k, combination, sense, this.steady);
+    for (let part = 1; part <= this.cases.spans.length; part++) {
+      const sign = this.signOf(part, k, combination, sense);
+      if (sign > 0) this.addShare(part, k, combination, sense, this.steady);
+      else if (sign === 0) this.addShare(part, k, combination, sense, this.changing[this.changes++]!.fill(0));
+    }
+    const cuts = this.cutAtZeros();
+    this.value = Number.NEGATIVE_INFINITY;
+    for (let i = 1; i < cuts; i++) this.searchBetween(this.cuts[i - 1]!, this.cuts[i]!);
+  }
+
+  /** 1 where a share is adverse all along the piece, −1 where it never is, 0 where that may change. */
+  private signOf(part: number, k: number, combination: number, sense: Sense): number {
+    const { degree, count, control } = this.curves;
+    let least = Number.POSITIVE_INFINITY;
+    let most = Number.NEGATIVE_INFINITY;
+    for (let j = 0; j <= 2 * degree; j++) {
+      const at = (k * (2 * degree + 1) + j) * count;
+      const share = sense * shareOf(this.cases, part, combination, control, at);
+      if (share < least) least = share;
+      if (share > most) most = share;
+    }
+    return most <= this.nothing ? -1 : least >= -this.nothing ? 1 : 0;
+  }
+
+  private addShare(part: number, k: number, combination: number, sense: Sense, into: Float64Array): void {
+    const { degree, count, power } = this.curves;
+    for (let j = 0; j <= degree; j++) {
+      into[j]! += sense * shareOf(this.cases, part, combination, power, (k * (degree + 1) + j) * count);
+    }
+  }
+
+  /** 0, the zeros of the changing shares, and 1, ascending; how many there are. */
+  private cutAtZeros(): number {
+    let count = 0;
+    this.cuts[count++] = 0;
+    for (let p = 0; p < this.changes; p++) {
+      const found = this.roots.find(this.changing[p]!, this.curves.degree);
+      for (let i = 0; i < found; i++) this.cuts[count++] = this.roots.roots[i]!;
+    }
+    this.cuts[count++] = 1;
+    if (this.changes > 1) this.cuts.subarray(0, count).sort();
+    return count;
+  }
+
+  private searchBetween(from: number, to: number): void {
+    const { degree } = this.curves;
+    const { sum, slope } = this;
+    const middle = (from + to) / 2;
+    sum.set(this.steady);
+    for (let p = 0; p < this.changes; p++) {
+      const share = this.changing[p]!;
+      if (horner(share, degree, middle) > 0) for (let j = 0; j <= degree; j++) sum[j]! += share[j]!;
+    }
+    this.tryAt(from);
+    this.tryAt(to);
+    for (let j = 1; j <= degree; j++) slope[j - 1] = sum[j]! * j;
+    const turns = degree > 0 ? this.roots.find(slope, degree - 1) : 0;
+    for (let i = 0; i < turns; i++) {
+      const t = this.roots.roots[i]!;
+      if (t > from && t < to) this.tryAt(t);
+    }
+  }
+
+  private tryAt(t: number): void {
+    const value = horner(this.sum, this.curves.degree, t);
+    if (value > this.value) {
+      this.value = value;
+      this.t = t;
+    }
+  }
+}

@@ -1,0 +1,3 @@
+export { firstFrequency } from './frequency';
+export { joinMasses, massOfLoads, readMasses, totalMass } from './masses';
+export type * from './types';

@@ -1,7 +1,7 @@
 import { useMemo } from 'react';
 import type { Piecewise } from '@/engine/polynomial/index';
 import { valueAt } from './geometry/curve';
-import type { NamedLength } from './geometry/dimensions';
+import { type NamedLength, packed } from './geometry/dimensions';
 import { Dimension } from './marks/Dimension';
 import { Rich } from './marks/Rich';
 import { SchematicFrame, SchematicMember, spread } from './schematic/SchematicFrame';
@@ -59,21 +59,22 @@ const SIZES = {
   },
 } as const;
 
-type LengthsProps = { lengths: readonly NamedLength[]; toX: (metres: number) => number; base: number };
+type RowsProps = { rows: NamedLength[][]; toX: (metres: number) => number; base: number };
 
-function NamedLengths({ lengths, toX, base }: LengthsProps) {
-  const inOrder = [...lengths].sort((a, b) => a.to - a.from - (b.to - b.from));
-  return inOrder.map(({ symbol, from, to }, i) => {
+function NamedLengths({ rows, toX, base }: RowsProps) {
+  return rows.flatMap((row, i) => {
     const y = base + 42 + i * 19;
-    const [x1, x2] = [toX(from), toX(to)];
-    return (
-      <g key={symbol}>
-        <Dimension y={y} from={y - 10} xs={[x1, x2]} pairs={[[x1, x2]]} />
-        <text x={(x1 + x2) / 2} y={y - 5} textAnchor="middle" className="figure">
-          <Rich text={symbol} />
-        </text>
-      </g>
-    );
+    return row.map(({ symbol, from, to }) => {
+      const [x1, x2] = [toX(from), toX(to)];
+      return (
+        <g key={`${symbol} ${from}`}>
+          <Dimension y={y} from={y - 10} xs={[x1, x2]} pairs={[[x1, x2]]} />
+          <text x={(x1 + x2) / 2} y={y - 5} textAnchor="middle" className="figure">
+            <Rich text={symbol} />
+          </text>
+        </g>
+      );
+    });
   });
 }
 
@@ -83,7 +84,8 @@ export function Schematic(props: SchematicProps) {
   const size = SIZES[props.size ?? 'row'];
   const { base, reach } = size;
   const width = props.width ?? size.width;
-  const height = size.height + Math.max(0, (lengths?.length ?? 0) - 2) * 19;
+  const rows = packed(lengths ?? []);
+  const height = size.height + Math.max(0, rows.length - 2) * 19;
   const { toX, momentCurve, shape } = useMemo(() => {
     const toX = spread(width, size, beam.length);
     const at = { toX, base, side };
@@ -102,7 +104,7 @@ export function Schematic(props: SchematicProps) {
       <SchematicMember beam={beam} toX={toX} size={size} />
       <SchematicLoads loads={beam.loads ?? []} toX={toX} base={base} scale={size.loads} names={loadNames} />
       {mark && <SchematicMarks mark={mark} toX={toX} base={base} width={width} deflectedAt={deflectedAt} />}
-      {lengths && <NamedLengths lengths={lengths} toX={toX} base={base} />}
+      <NamedLengths rows={rows} toX={toX} base={base} />
     </SchematicFrame>
   );
 }

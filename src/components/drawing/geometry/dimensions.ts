@@ -20,8 +20,8 @@ function partsBetween(positions: readonly number[]): DimensionPart[] {
 }
 
 /** Puts each part in the innermost row where it meets no other. */
-function packed(parts: readonly DimensionPart[]): DimensionPart[][] {
-  const rows: DimensionPart[][] = [];
+export function packed<T extends DimensionPart>(parts: readonly T[]): T[][] {
+  const rows: T[][] = [];
   for (const part of [...parts].sort((a, b) => a.to - a.from - (b.to - b.from))) {
     const row = rows.find((taken) => taken.every(({ from, to }) => part.to <= from || part.from >= to));
     if (row) row.push(part);

@@ -1,6 +1,6 @@
 import type { Load } from '@/engine/model/index';
 import type { Map1 } from '../geometry/curve';
-import { combRows, oneWayParts } from '../geometry/stacking';
+import { type CombRow, combRows, oneWayParts } from '../geometry/stacking';
 import { arrowPath, combPaths } from '../marks/paths';
 import { Rich } from '../marks/Rich';
 import { Turn } from '../strip/Loads';
@@ -16,42 +16,71 @@ type Props = {
 
 const largestOf = (sizes: readonly number[]): number => Math.max(0, ...sizes.map(Math.abs));
 
-function Name({ x, y, text }: { x: number; y: number; text: string | undefined }) {
+function Name({
+  x,
+  y,
+  text,
+  anchor = 'start',
+}: {
+  x: number;
+  y: number;
+  text: string | undefined;
+  anchor?: 'start' | 'end';
+}) {
   if (!text) return null;
   return (
-    <text x={x} y={y} className="figure">
+    <text x={x} y={y} textAnchor={anchor} className="figure">
       <Rich text={text} />
     </text>
   );
 }
 
+/** Where a row writes each of its names: the first of its loads that goes by it. */
+const namedIn = (row: CombRow, names: Props['names']): ReadonlySet<number> =>
+  new Set(
+    [...new Set(row.loads.map(({ index }) => names?.[index]))].map(
+      (name) => row.loads.find(({ index }) => names?.[index] === name)?.index ?? -1,
+    ),
+  );
+
 function Combs({ loads, toX, base, scale, names }: Props) {
   const rows = combRows(loads);
   const tallest = (rows.length > 1 ? 9 : 11) * scale;
-  return rows.flatMap((row, level) =>
-    row.loads.flatMap(({ load, index }) => {
-      // Rows of uniform load are all of one height; a load that varies needs more to show it.
-      const { w0: a, w1: b } = load;
-      const tall = (w: number) =>
-        a === b ? tallest : Math.max(2, (Math.abs(w) / Math.max(Math.abs(a), Math.abs(b))) * 18 * scale);
-      const y = base - 2 - level * (tallest + 4);
-      return oneWayParts(load).map(({ from, to, w0, w1 }) => {
+  let y = base - 2;
+  return rows.flatMap((row) => {
+    // Rows of uniform load are all of one height; a row that varies needs more to show it, and one scale.
+    const isEven = row.loads.every(({ load }) => load.w0 === load.w1);
+    const most = isEven ? tallest : 18 * scale;
+    const tall = (w: number) => (isEven ? most : w === 0 ? 0 : Math.max(3, (Math.abs(w) / row.most) * most));
+    const foot = y;
+    y -= most + 4;
+    const named = namedIn(row, names);
+    return row.loads.flatMap(({ load, index }) =>
+      oneWayParts(load).map(({ from, to, w0, w1 }, part) => {
         const upward = w0 + w1 < 0;
-        const { arrows, cap } = combPaths([toX(from), toX(to)], y, [tall(w0), tall(w1)], {
+        const { arrows, cap } = combPaths([toX(from), toX(to)], foot, [tall(w0), tall(w1)], {
           step: 13,
           upward,
         });
         const sense = upward ? ' upward' : '';
+        const rises = Math.abs(w1) > Math.abs(w0);
         return (
           <g key={`${index} ${from}`}>
             <path className={`load${sense}`} d={arrows} />
             <path className={`load-cap${sense}`} d={cap} />
-            <Name x={toX(from) + 2} y={y - tallest - 5} text={names?.[index]} />
+            {part === 0 && named.has(index) && (
+              <Name
+                x={rises ? toX(to) - 2 : toX(from) + 2}
+                y={foot - Math.max(tall(w0), tall(w1)) - 5}
+                text={names?.[index]}
+                anchor={rises ? 'end' : 'start'}
+              />
+            )}
           </g>
         );
-      });
-    }),
-  );
+      }),
+    );
+  });
 }
 
 function Points({ loads, toX, base, scale, names }: Props) {

@@ -23,13 +23,15 @@ export interface QuantityFieldProps {
   /** Why the value cannot be changed here, such as "from section OV 260". */
   locked?: string | undefined;
   changedAt?: string | undefined;
+  /** At the end of the label's line, such as taking the field out. */
+  action?: ReactNode;
   /** Form names: the text as `name`, its unit as `name.unit`. */
   name?: string | undefined;
 }
 
 /** A parameter: keeps exactly what was typed, says at once how it reads or why it does not. */
 export function QuantityField(props: QuantityFieldProps) {
-  const { symbol, label, dimension, entry, onChange, range, locked } = props;
+  const { label, dimension, entry, onChange, range, locked } = props;
   const id = useId();
   const reading = readQuantity(entry.text, dimension, { unit: entry.unit });
   const good = useGoodEntry(entry, reading);
@@ -47,16 +49,7 @@ export function QuantityField(props: QuantityFieldProps) {
     <div
       className={`min-w-0 px-14 pt-8 pb-9 max-md:grid max-md:grid-cols-[minmax(0,1fr)_minmax(0,168px)] max-md:items-center max-md:gap-x-10 ${error ? 'bg-error-wash' : ''}`}
     >
-      <div className="flex items-baseline gap-7 text-schedule text-ink-2">
-        <label htmlFor={id} className="min-w-0">
-          {symbol && <i className="mr-4 text-[1rem] font-semibold text-ink">{symbol}</i>} {label}
-        </label>
-        {props.changedAt && (
-          <span className="ml-auto">
-            <RevisionTriangle revision={props.changedAt} />
-          </span>
-        )}
-      </div>
+      <LabelLine {...props} id={id} />
       <div
         className={`mt-2 flex items-baseline gap-6 bg-field focus-within:outline-2 focus-within:outline-ochre ${error ? 'border-b-[2.5px] border-error' : 'border-b-[1.5px] border-ink'}`}
       >
@@ -85,6 +78,24 @@ export function QuantityField(props: QuantityFieldProps) {
         />
       </div>
       <QuantityBelow {...props} id={`${id}-note`} reading={reading} error={error} set={set} />
+    </div>
+  );
+}
+
+type LabelProps = Pick<QuantityFieldProps, 'symbol' | 'label' | 'changedAt' | 'action'> & { id: string };
+
+function LabelLine({ id, symbol, label, changedAt, action }: LabelProps) {
+  return (
+    <div className="flex items-baseline gap-7 text-schedule text-ink-2">
+      <label htmlFor={id} className="min-w-0">
+        {symbol && <i className="mr-4 text-[1rem] font-semibold text-ink">{symbol}</i>} {label}
+      </label>
+      {changedAt && (
+        <span className="ml-auto">
+          <RevisionTriangle revision={changedAt} />
+        </span>
+      )}
+      {action && <span className="ml-auto">{action}</span>}
     </div>
   );
 }

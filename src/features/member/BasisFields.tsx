@@ -16,19 +16,19 @@ export function BasisFields({ draft, criteria, faults, onChange }: BasisFieldsPr
   const { section } = draft;
   return (
     <>
-      {section && (
-        <div className="px-14 pt-8 pb-9">
+      <div className="px-14 pt-8 pb-9">
+        {section && (
           <ChoiceField
             label="Material"
             value={section.material}
             choices={materialsFor(section.values).map(({ id, name }) => ({ value: id, label: name }))}
             error={faults.get('section/material') ?? faults.get('section')}
-            help={section.values.designation}
             onChange={(event) => onChange({ section: { ...section, material: event.target.value } })}
           />
-        </div>
-      )}
-      <div className="px-14 pt-8 pb-9">
+        )}
+        <OwnWeight draft={draft} onChange={onChange} />
+      </div>
+      <div className="px-14 pt-8 pb-9 md:col-span-2">
         <ChoiceField
           label="Criteria"
           value={draft.criteria}
@@ -41,28 +41,30 @@ export function BasisFields({ draft, criteria, faults, onChange }: BasisFieldsPr
           onChange={(event) => onChange({ criteria: event.target.value })}
         />
       </div>
-      <div className="px-14 pt-8 pb-9">
-        <span className="caps mb-2 block">Own weight</span>
-        <Checkbox
-          checked={draft.selfWeight}
-          onChange={(event) => onChange({ selfWeight: event.target.checked })}
-        >
-          Of the section, in G
-        </Checkbox>
-        {!draft.selfWeight && (
-          <Field
-            label="Left out because"
-            value={draft.selfWeightReason}
-            maxLength={300}
-            error={
-              draft.selfWeightReason.trim() === ''
-                ? 'Say why. The reason is printed on the sheet.'
-                : undefined
-            }
-            onChange={(event) => onChange({ selfWeightReason: event.target.value })}
-          />
-        )}
-      </div>
+    </>
+  );
+}
+
+function OwnWeight({ draft, onChange }: Pick<BasisFieldsProps, 'draft' | 'onChange'>) {
+  return (
+    <>
+      <Checkbox
+        checked={draft.selfWeight}
+        onChange={(event) => onChange({ selfWeight: event.target.checked })}
+      >
+        Own weight, in G
+      </Checkbox>
+      {!draft.selfWeight && (
+        <Field
+          label="Left out because"
+          value={draft.selfWeightReason}
+          maxLength={300}
+          error={
+            draft.selfWeightReason.trim() === '' ? 'Say why. The reason is printed on the sheet.' : undefined
+          }
+          onChange={(event) => onChange({ selfWeightReason: event.target.value })}
+        />
+      )}
     </>
   );
 }

@@ -15,7 +15,7 @@ interface ChecksZoneProps {
 
 const loadKit = () => import('@/features/template/derivation-kit');
 
-/** Every judged figure, the governing one first, what no ratio judges, and what is not judged at all. */
+/** Every judged figure, the governing one first, and what no ratio judges. */
 export function ChecksZone({ checks, system, missing }: ChecksZoneProps) {
   const host = useRef<HTMLElement>(null);
   const kit = useLater(loadKit, useNear(host));
@@ -26,47 +26,57 @@ export function ChecksZone({ checks, system, missing }: ChecksZoneProps) {
       </ZoneHeading>
       {checks === null && <p className="text-ink-2">{missing}</p>}
       {checks && (
-        <>
-          <table className="schedule">
-            <thead>
-              <tr>
-                <th scope="col">Check</th>
-                <th scope="col">Value on limit</th>
-                <th scope="col">Utilisation</th>
+        <table className="schedule entries">
+          <thead>
+            <tr>
+              <th scope="col">Check</th>
+              <th scope="col">Value on limit</th>
+              <th scope="col">Utilisation</th>
+            </tr>
+          </thead>
+          <tbody>
+            {checks.rows.map((row, index) => (
+              <tr
+                key={row.id}
+                data-governing={index === 0 ? '' : undefined}
+                className="max-md:grid-cols-[minmax(0,1fr)_auto]"
+              >
+                <th scope="row" className="max-md:col-span-2">
+                  {row.title}
+                  <Working row={row} set={kit?.setTex} />
+                </th>
+                <td className="whitespace-nowrap">{valueOnLimit(row, system)}</td>
+                <td>
+                  <UtilisationTick ratio={row.ratio} width={64} />
+                </td>
               </tr>
-            </thead>
-            <tbody>
-              {checks.rows.map((row, index) => (
-                <tr key={row.id} data-governing={index === 0 ? '' : undefined}>
-                  <th scope="row">
-                    {row.title}
-                    <span className="block text-note font-normal text-ink-2">{row.place}</span>
-                    <Working row={row} set={kit?.setTex} />
-                  </th>
-                  <td>{valueOnLimit(row, system)}</td>
-                  <td>
-                    <UtilisationTick ratio={row.ratio} width={64} />
-                  </td>
-                </tr>
-              ))}
-              {checks.findings.map((finding) => (
-                <tr key={finding.id}>
-                  <th scope="row">{finding.title}</th>
-                  <td colSpan={2}>
-                    <b className="font-semibold text-ochre-ink">Needs a fixing.</b> {finding.detail}
-                  </td>
-                </tr>
-              ))}
-            </tbody>
-          </table>
-          <h3 className="mt-14 font-semibold">Not checked</h3>
-          <ul className="list-disc pl-18 text-schedule text-ink-2">
-            {checks.notChecked.map((scope) => (
-              <li key={scope}>{scope}</li>
             ))}
-          </ul>
-        </>
+            {checks.findings.map((finding) => (
+              <tr key={finding.id}>
+                <th scope="row">{finding.title}</th>
+                <td colSpan={2}>
+                  <b className="font-semibold text-ochre-ink">Needs a fixing.</b> {finding.detail}
+                </td>
+              </tr>
+            ))}
+          </tbody>
+        </table>
       )}
+    </section>
+  );
+}
+
+/** What no check of the criteria looks at: as a strip under the checks, where the sheet is wide. */
+export function NotChecked({ checks }: Pick<ChecksZoneProps, 'checks'>) {
+  if (checks === null) return null;
+  return (
+    <section className="px-(--pad) pt-10 pb-14 max-[1379px]:border-t-0! min-[1380px]:col-span-2 min-[1380px]:row-start-2">
+      <h3 className="font-semibold">Not checked</h3>
+      <ul className="list-disc gap-x-28 pl-18 text-schedule text-ink-2 md:columns-2">
+        {checks.notChecked.map((scope) => (
+          <li key={scope}>{scope}</li>
+        ))}
+      </ul>
     </section>
   );
 }
@@ -80,7 +90,9 @@ function Working({
 }) {
   return (
     <details className="font-normal">
-      <summary className="link min-h-24 text-note pointer-coarse:min-h-44">Working</summary>
+      <summary className="min-h-24 list-none text-note text-ink-2 pointer-coarse:min-h-44 [&::-webkit-details-marker]:hidden">
+        {row.place} <span className="link ml-4 whitespace-nowrap text-ink">Working</span>
+      </summary>
       <p className="text-note text-ink-2">{row.clause}</p>
       {set ? (
         // biome-ignore lint/a11y/noNoninteractiveTabindex: a long formula is scrolled by the keyboard too
@@ -97,5 +109,6 @@ function Working({
 
 function valueOnLimit({ kind, demand, capacity }: CheckRow, system: UnitSystemName): string {
   const purpose = kind === 'deflection' ? 'deflection' : 'stress';
-  return `${formatFor(demand, purpose, system)} on ${formatFor(capacity, purpose, system)}`;
+  const [figure] = formatFor(demand, purpose, system).split('\u00a0');
+  return `${figure} on ${formatFor(capacity, purpose, system)}`;
 }

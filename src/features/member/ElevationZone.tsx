@@ -1,5 +1,4 @@
 import { useMemo, useState } from 'react';
-import { ChoiceField } from '@/components/ui/Field';
 import { ZoneHeading } from '@/components/ui/ZoneHeading';
 import type { UnitSystemName } from '@/engine/quantity';
 import { BeamResults } from '@/features/template/BeamResults';
@@ -13,6 +12,9 @@ interface ElevationZoneProps {
   readonly onEdit: (symbol: string) => void;
 }
 
+/** What is judged: slope stands on the template's page, and in the table. */
+const QUANTITIES = ['shear', 'moment', 'deflection'] as const;
+
 /** The member to scale with its diagrams, under the loads that are chosen. */
 export function ElevationZone({ live, system, notDrawn, onEdit }: ElevationZoneProps) {
   const [id, setId] = useState('total');
@@ -25,17 +27,23 @@ export function ElevationZone({ live, system, notDrawn, onEdit }: ElevationZoneP
   );
   return (
     <section className="border-b border-ink">
-      <div className="flex flex-wrap items-start gap-x-20 px-(--pad) pt-10">
+      <div className="flex flex-wrap items-start gap-x-20 px-14 pt-9 max-md:px-(--pad) md:-mb-14">
         <ZoneHeading letter="A">Elevation</ZoneHeading>
         {views.length > 1 && (
-          <div className="ml-auto w-320 max-w-full max-md:w-full">
-            <ChoiceField
-              label="Loads shown"
+          <label className="ml-auto flex items-baseline gap-10 text-schedule text-ink-2 max-md:w-full">
+            <span className="whitespace-nowrap">Loads shown</span>
+            <select
               value={view?.id}
-              choices={views.map((one) => ({ value: one.id, label: one.name }))}
               onChange={(event) => setId(event.target.value)}
-            />
-          </div>
+              className="input min-h-28! w-300! py-1! text-schedule! text-ink max-md:w-full! pointer-coarse:min-h-44!"
+            >
+              {views.map((one) => (
+                <option key={one.id} value={one.id}>
+                  {one.name}
+                </option>
+              ))}
+            </select>
+          </label>
         )}
       </div>
       {view && named ? (
@@ -44,6 +52,7 @@ export function ElevationZone({ live, system, notDrawn, onEdit }: ElevationZoneP
           instance={named}
           solution={live.evaluation ? view.solution : null}
           system={system}
+          quantities={QUANTITIES}
           depth={shown?.section?.depth}
           notDrawn={notDrawn}
           onEdit={onEdit}

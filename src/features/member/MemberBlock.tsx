@@ -28,10 +28,13 @@ export function MemberBlock({ data, work }: MemberBlockProps) {
   const { job, mayEdit, template } = data;
   const { member, draft, isDirty, saving } = work;
   const why = reasonNotToSave(work, mayEdit);
+  const isSaving = saving.kind === 'saving';
   const action = {
-    label: saving.kind === 'saving' ? 'Saving' : 'Save',
+    label: isSaving ? 'Saving' : 'Save',
     keyName: 'S',
-    ...(why === undefined ? { onPress: () => void work.save() } : { reason: why }),
+    ...(why === undefined
+      ? { onPress: () => void work.save() }
+      : { reason: why, isQuiet: !isDirty || isSaving }),
   };
   useKeys({ s: () => why === undefined && void work.save() });
   const identity = {

@@ -12,7 +12,7 @@ import { releaseKey, toRedundant, toRelease } from '@/features/template/release'
 import { paths } from '@/paths';
 import { BasisFields } from './BasisFields';
 import { BasisZone } from './BasisZone';
-import { ChecksZone } from './ChecksZone';
+import { ChecksZone, NotChecked } from './ChecksZone';
 import { ElevationZone } from './ElevationZone';
 import type { MemberEvaluation } from './evaluate';
 import { HistoryZone } from './HistoryZone';
@@ -150,8 +150,7 @@ function Inputs({ data, work: { draft, change, faults } }: PartProps) {
   );
 }
 
-const WIDE =
-  'min-[1380px]:grid-cols-[minmax(0,452fr)_minmax(0,584fr)] min-[1380px]:[&>*+*]:border-t-0 min-[1380px]:[&>*+*]:border-l min-[1380px]:[&>*+*]:border-ink';
+const WIDE = 'min-[1380px]:grid-cols-[minmax(0,452fr)_minmax(0,584fr)] [&>*+*]:border-t [&>*+*]:border-ink';
 
 /** Checks to reactions. */
 function Zones({ data, work }: PartProps) {
@@ -165,16 +164,19 @@ function Zones({ data, work }: PartProps) {
     <div className="min-w-0">
       <div className={`grid grid-cols-[minmax(0,1fr)] ${WIDE}`}>
         <ChecksZone checks={evaluation?.checks ?? null} system={system} missing={missing} />
-        <SectionZone
-          section={draft.section}
-          inputs={inputs}
-          system={system}
-          mayEdit={data.mayEdit}
-          onPick={(section) => change({ section })}
-        />
+        <NotChecked checks={evaluation?.checks ?? null} />
+        <div className="min-w-0 min-[1380px]:col-start-2 min-[1380px]:row-start-1 min-[1380px]:border-t-0! min-[1380px]:border-l">
+          <SectionZone
+            section={draft.section}
+            inputs={inputs}
+            system={system}
+            mayEdit={data.mayEdit}
+            onPick={(section) => change({ section })}
+          />
+          <LoadGroupsZone evaluation={evaluation} system={system} />
+        </div>
       </div>
       <div className="border-t border-ink">
-        <LoadGroupsZone evaluation={evaluation} system={system} />
         {evaluation && (
           <RedundantZone
             evaluation={evaluation}

@@ -1,5 +1,4 @@
 import { useState } from 'react';
-import { Button } from '@/components/ui/Button';
 import { Field } from '@/components/ui/Field';
 import { UtilisationTick } from '@/components/ui/UtilisationTick';
 import { ZoneHeading } from '@/components/ui/ZoneHeading';
@@ -37,7 +36,7 @@ export function SectionZone({ section, inputs, system, mayEdit, onPick }: Sectio
   };
   const found = useCandidates(search, section);
   const items = found.state === 'found' ? found.items : NONE;
-  const utilisations = useUtilisations(items, inputs, section?.material);
+  const utilisations = useUtilisations(items, inputs, section);
   return (
     <section className="zone">
       <ZoneHeading letter="C" note="lightest first">
@@ -53,7 +52,7 @@ export function SectionZone({ section, inputs, system, mayEdit, onPick }: Sectio
         {said(found, section)}
       </p>
       {items.length > 0 && (
-        <table className="schedule stacking">
+        <table className="schedule entries">
           <thead>
             <tr>
               <th scope="col">Section</th>
@@ -74,7 +73,8 @@ export function SectionZone({ section, inputs, system, mayEdit, onPick }: Sectio
                 utilisation={utilisations.get(item)}
                 isUsed={section?.table === item.table && section.values.designation === item.designation}
                 system={system}
-                onPick={mayEdit ? () => onPick(draftSection(item, section?.material)) : undefined}
+                massName={units.massName}
+                onPick={mayEdit ? () => onPick(draftSection(item, section)) : undefined}
               />
             ))}
           </tbody>
@@ -104,7 +104,7 @@ function SearchFields({ text, units, faults, onChange }: SearchFieldsProps) {
     onChange: (event: { target: { value: string } }) => onChange({ ...text, [name]: event.target.value }),
   });
   return (
-    <div className="mb-10 grid grid-cols-[minmax(0,2fr)_minmax(0,1fr)_minmax(0,1fr)] gap-14 max-md:grid-cols-2">
+    <div className="mb-8 grid grid-cols-[minmax(0,2fr)_minmax(0,1fr)_minmax(0,1fr)] gap-14 max-md:grid-cols-2">
       <div className="max-md:col-span-2">
         <Field label="Designation" type="search" {...field('q')} />
       </div>
@@ -139,38 +139,44 @@ interface RowProps {
   readonly utilisation: Utilisation | string | undefined;
   readonly isUsed: boolean;
   readonly system: UnitSystemName;
+  readonly massName: string;
   readonly onPick: (() => void) | undefined;
 }
 
-function Row({ item, utilisation, isUsed, system, onPick }: RowProps) {
+function Row({ item, utilisation, isUsed, system, massName, onPick }: RowProps) {
   const isSaid = typeof utilisation === 'string';
   const mass = formatFor(item.mass_kg_m, 'mass_per_length', system).split('\u00a0')[0];
   return (
-    <tr data-chosen={isUsed ? '' : undefined}>
+    <tr data-chosen={isUsed ? '' : undefined} className="max-md:grid-cols-3">
       <th scope="row" className="whitespace-nowrap">
         {item.designation}
       </th>
-      <td className="figure" data-label="Mass">
+      <td className="figure">
         {mass}
+        <span className="text-ink-2 md:hidden"> {massName}</span>
       </td>
       {isSaid ? (
-        <td colSpan={3}>{utilisation}</td>
+        <td colSpan={3} className="max-md:order-2 max-md:col-span-3">
+          {utilisation}
+        </td>
       ) : (
         (['bending', 'shear', 'deflection'] as const).map((kind) => (
-          <td key={kind} data-label={kind.charAt(0).toUpperCase() + kind.slice(1)}>
+          <td key={kind} data-label={kind.charAt(0).toUpperCase() + kind.slice(1)} className="max-md:order-2">
             {utilisation?.[kind] == null ? '–' : <UtilisationTick ratio={utilisation[kind]} width={48} />}
           </td>
         ))
       )}
       {onPick && (
-        <td data-label="">
-          {isUsed ? (
-            <b className="font-semibold">in use</b>
-          ) : (
-            <Button tone="text" aria-label={`Use ${item.designation}`} onClick={onPick}>
-              Use
-            </Button>
-          )}
+        <td className="py-0! whitespace-nowrap max-md:order-1 max-md:text-right">
+          <button
+            type="button"
+            aria-label={isUsed ? `${item.designation} is in use` : `Use ${item.designation}`}
+            aria-disabled={isUsed}
+            onClick={isUsed ? undefined : onPick}
+            className={`min-h-26 font-semibold pointer-coarse:min-h-44 ${isUsed ? 'cursor-default' : 'link'}`}
+          >
+            {isUsed ? 'in use' : 'Use'}
+          </button>
         </td>
       )}
     </tr>

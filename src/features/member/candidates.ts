@@ -1,7 +1,7 @@
 import type { CheckKind } from '@/engine/check';
 import { materialFor } from '@/engine/section';
 import { type SectionItem, toSectionValues } from '@/features/section/section';
-import { materialsFor } from '@/features/template/section-pick';
+import { usualMaterial } from '@/features/template/section-pick';
 import { evaluateMember, type MemberInputs } from './evaluate';
 import type { DraftSection } from './workspace';
 
@@ -35,12 +35,12 @@ export function sectionQuery(
   };
 }
 
-/** The section as the draft takes it: of the material in use where it can be made of it, else of the usual one. */
-export function draftSection(item: SectionItem, material: string | undefined): DraftSection {
+/** The section as the draft takes it: of the material in use where sections like it are made of the same, else of the usual one. */
+export function draftSection(item: SectionItem, current: DraftSection | null): DraftSection {
   const values = toSectionValues(item);
-  const offered = materialsFor(values);
-  const chosen = offered.find(({ id }) => id === material) ?? offered[0];
-  return { values, table: item.table, material: chosen?.id ?? '' };
+  const usual = usualMaterial(values, item.table);
+  const isAlike = current !== null && usualMaterial(current.values, current.table) === usual;
+  return { values, table: item.table, material: isAlike ? current.material : usual };
 }
 
 export type Utilisation = { readonly [K in CheckKind]: number | null };

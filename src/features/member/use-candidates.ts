@@ -49,7 +49,7 @@ const INPUTS_REST_MS = 250;
 export function useUtilisations(
   items: readonly SectionItem[],
   inputs: MemberInputs,
-  material: string | undefined,
+  current: DraftSection | null,
 ): ReadonlyMap<SectionItem, Utilisation | string> {
   const rested = useRestedValue(inputs, INPUTS_REST_MS);
   const [found, setFound] = useState<ReadonlyMap<SectionItem, Utilisation | string>>(new Map());
@@ -59,11 +59,11 @@ export function useUtilisations(
     const next = (index: number) => {
       const item = items[index];
       if (!item) return setFound(new Map(results));
-      results.set(item, utilisationWith(rested, draftSection(item, material)));
+      results.set(item, utilisationWith(rested, draftSection(item, current)));
       timer = setTimeout(() => next(index + 1));
     };
     timer = setTimeout(() => next(0));
     return () => clearTimeout(timer);
-  }, [items, rested, material]);
+  }, [items, rested, current]);
   return found;
 }

@@ -113,19 +113,29 @@ describe('candidate sections', () => {
   };
 
   test('are judged as the member would be with them', () => {
-    const found = utilisationWith(inputs({ section: null }), draftSection(item, 's355'));
+    const found = utilisationWith(inputs({ section: null }), draftSection(item, null));
     const rows = evaluated().checks?.rows ?? [];
     const bending = rows.find(({ kind }) => kind === 'bending')?.ratio ?? Number.NaN;
     expect(found).toMatchObject({ bending: expect.closeTo(bending, 9) });
   });
 
-  test('keep the material where they can be made of it', () => {
-    expect(draftSection(item, 's275').material).toBe('s275');
-    expect(draftSection(item, 'c24').material).toBe('s235');
+  test('are made of what such sections are usually made of, or of what is in use', () => {
+    const european = draftSection(item, null);
+    const american = { ...item, table: 'american-wide-flange' };
+    const inch = {
+      ...item,
+      table: 'dimension-lumber',
+      dimensions_mm: { h: 241, b: 38 },
+      shape: 'rectangle' as const,
+    };
+    expect(european.material).toBe('s355');
+    expect(draftSection(item, { ...european, material: 's275' }).material).toBe('s275');
+    expect(draftSection(american, european).material).toBe('a992');
+    expect(draftSection(inch, european).material).toBe('dfl-no2');
   });
 
   test('begin near the section in use, and are looked for everywhere once something is said', () => {
-    const current = draftSection(item, 's355');
+    const current = draftSection(item, null);
     const all = { q: '', depthMax: null, massMax: null };
     expect(sectionQuery(all, null)).toBeNull();
     expect(sectionQuery(all, current)).toMatchObject({ table: 'european-i', mass_min: String(42.2 * 0.75) });

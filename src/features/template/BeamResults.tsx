@@ -14,7 +14,7 @@ type Named = Pick<Instance, 'dimensions' | 'loadNames'>;
 interface BeamResultsProps
   extends Pick<
     ElevationStripProps,
-    'depth' | 'envelopes' | 'fault' | 'reactions' | 'deflectionLimit' | 'width'
+    'depth' | 'envelopes' | 'fault' | 'quantities' | 'reactions' | 'deflectionLimit' | 'width'
   > {
   readonly beam: Beam;
   readonly instance: Named;

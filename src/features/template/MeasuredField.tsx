@@ -1,3 +1,4 @@
+import type { ReactNode } from 'react';
 import { RichHtml } from '@/components/drawing/marks/RichHtml';
 import { QuantityField } from '@/components/ui/QuantityField';
 import type { UnitSystemName } from '@/engine/quantity';
@@ -21,6 +22,7 @@ interface MeasuredProps {
   /** Words that tell this field from its neighbours, such as the load group. */
   readonly label?: string;
   readonly isRanged?: boolean;
+  readonly action?: ReactNode;
 }
 
 /** A quantity with its range; what is wrong with its text is said by the field itself. */
@@ -36,6 +38,7 @@ export function MeasuredField(props: MeasuredProps) {
       units={unitsOffered(parameter.dimension, unitOf(parameter, system))}
       range={isRanged ? { low: min, high: max } : undefined}
       error={error}
+      action={props.action}
       onChange={(next) => onChange(next)}
     />
   );

@@ -1,4 +1,4 @@
-import { useId } from 'react';
+import { useId, useRef } from 'react';
 import { Button } from '@/components/ui/Button';
 import { FieldNote } from '@/components/ui/Field';
 import { readQuantity, type UnitSystemName, unitText } from '@/engine/quantity';
@@ -26,56 +26,95 @@ const USUAL_GROUPS: readonly LoadGroup[] = [
 
 /** A parameter that is a list: one line for each row. */
 export function ParameterRows({ parameter, rows, system, faults, groups, onChange }: ParameterRowsProps) {
-  const { symbol, name, help, columns, most, least } = parameter;
+  const { symbol, name, help, most, least } = parameter;
   const id = useId();
+  const list = useRef<HTMLOListElement>(null);
+  // A new row is typed next; one taken out leaves the focus on the row before it.
+  const goTo = (index: number) =>
+    requestAnimationFrame(() => list.current?.children[index]?.querySelector('input')?.focus());
   const put = (index: number, column: string, cell: RawRow[string]) =>
     onChange(rows.map((row, at) => (at === index ? { ...row, [column]: cell } : row)));
   return (
     <fieldset data-symbol={symbol} className="border-t border-rule px-(--pad) py-10">
       <legend className="caps float-left mb-6 w-full">{name}</legend>
       <FieldNote id={`${id}-help`} help={help} error={faults.get(symbol)} />
-      <ol className="clear-both mt-6 grid gap-4">
+      <ol ref={list} className="clear-both mt-6 grid gap-x-28 gap-y-4 lg:grid-cols-2">
         {rows.map((row, index) => (
-          // biome-ignore lint/suspicious/noArrayIndexKey: a row has no identity but its place
-          <li key={index} className="flex flex-wrap items-start gap-10">
-            <span className="min-w-18 pt-7 text-right text-schedule text-ink-2 max-md:w-full max-md:pt-4 max-md:text-left">
-              {index + 1}
-            </span>
-            {columns.map((column) => (
-              <Cell
-                key={column.symbol}
-                column={column}
-                place={`${name} ${index + 1}`}
-                cell={row[column.symbol] ?? ''}
-                groups={groups.length > 0 ? groups : USUAL_GROUPS}
-                error={faults.get(`${symbol}/${index}/${column.symbol}`)}
-                onChange={(cell) => put(index, column.symbol, cell)}
-              />
-            ))}
-            <span className="flex min-h-34 items-center">
-              <Button
-                tone="text"
-                aria-label={`Remove row ${index + 1} of ${name}`}
-                onClick={() => onChange(rows.filter((_, at) => at !== index))}
-                reason={rows.length <= least ? 'One row is needed.' : undefined}
-              >
-                Remove
-              </Button>
-            </span>
-            <FieldNote id={`${id}-${index}`} error={faults.get(`${symbol}/${index}`)} />
-          </li>
+          <Row
+            // biome-ignore lint/suspicious/noArrayIndexKey: a row has no identity but its place
+            key={index}
+            parameter={parameter}
+            row={row}
+            index={index}
+            groups={groups.length > 0 ? groups : USUAL_GROUPS}
+            faults={faults}
+            onPut={(column, cell) => put(index, column, cell)}
+            onTakeOut={
+              rows.length > least
+                ? () => {
+                    onChange(rows.filter((_, at) => at !== index));
+                    goTo(Math.max(0, index - 1));
+                  }
+                : undefined
+            }
+          />
         ))}
       </ol>
       <div className="mt-8">
         <Button
           size="small"
           reason={rows.length >= most ? `At most ${most} rows.` : undefined}
-          onClick={() => onChange([...rows, newRow(parameter, system)])}
+          onClick={() => {
+            onChange([...rows, newRow(parameter, system)]);
+            goTo(rows.length);
+          }}
         >
           Add a row
         </Button>
       </div>
     </fieldset>
+  );
+}
+
+interface RowProps extends Pick<ParameterRowsProps, 'parameter' | 'faults' | 'groups'> {
+  readonly row: RawRow;
+  readonly index: number;
+  readonly onPut: (column: string, cell: RawRow[string]) => void;
+  /** Left out where no row can be spared. */
+  readonly onTakeOut: (() => void) | undefined;
+}
+
+function Row({ parameter, row, index, groups, faults, onPut, onTakeOut }: RowProps) {
+  const { symbol, name, columns } = parameter;
+  const id = useId();
+  return (
+    <li className="flex flex-wrap items-start gap-10">
+      <span className="min-w-18 pt-7 text-right text-schedule text-ink-2 max-md:w-full max-md:pt-4 max-md:text-left">
+        {index + 1}
+      </span>
+      {columns.map((column) => (
+        <Cell
+          key={column.symbol}
+          column={column}
+          place={`${name} ${index + 1}`}
+          cell={row[column.symbol] ?? ''}
+          groups={groups}
+          error={faults.get(`${symbol}/${index}/${column.symbol}`)}
+          onChange={(cell) => onPut(column.symbol, cell)}
+        />
+      ))}
+      <span className="flex min-h-34 items-center">
+        <Button
+          tone="text"
+          aria-label={`Remove row ${index + 1} of ${name}`}
+          onClick={onTakeOut}
+          reason={onTakeOut ? undefined : 'One row is needed.'}
+        >
+          Remove
+        </Button>
+      </span>
+      <FieldNote id={id} error={faults.get(`${symbol}/${index}`)} />
+    </li>
   );
 }
 

@@ -25,7 +25,8 @@ export function SectionPick({ section, system, fault, onPick }: SectionPickProps
   const { kit, found, wrong } = useSearch(text);
   const take = (part: Kit, { table, values }: FoundSection, material?: string) => {
     const materials = part.materialsFor(values);
-    const made = materials.find((one) => one.id === material) ?? usual(materials, system);
+    const wanted = material ?? part.usualMaterial(values, table);
+    const made = materials.find(({ id }) => id === wanted) ?? materials[0];
     if (!made) return;
     const pick = part.pickSection(table, values, made);
     setMessage(pick.ok ? null : pick.message);
@@ -94,13 +95,6 @@ function FoundList({ found, system, onTake }: FoundListProps) {
     </ul>
   );
 }
-
-const USUAL = { metric: ['s355', 'c24', 'gl24h'], us: ['a992', 'dfl-no2'] } as const;
-
-const usual = <T extends { readonly id: string }>(
-  materials: readonly T[],
-  system: UnitSystemName,
-): T | undefined => materials.find(({ id }) => USUAL[system].some((one) => one === id)) ?? materials[0];
 
 interface PickedProps {
   readonly section: PickedSection;

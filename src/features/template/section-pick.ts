@@ -8,6 +8,20 @@ export const materialsFor = ({ dimensions }: Pick<SectionValues, 'dimensions'>):
   return MATERIALS.filter(({ kind }) => (kind !== 'steel') === isTimber);
 };
 
+const USUAL: Readonly<Record<string, string>> = {
+  'american-wide-flange': 'a992',
+  'dimension-lumber': 'dfl-no2',
+  'glulam-inch': '24f-v4',
+  glulam: 'gl24h',
+};
+
+/** What a section of a table is usually made of. */
+export function usualMaterial({ dimensions }: Pick<SectionValues, 'dimensions'>, table: string): string {
+  const { shape } = dimensions;
+  if (shape === 'rectangle') return USUAL[table] ?? 'c24';
+  return USUAL[table] ?? (shape === 'i' || shape === 'channel' ? 's355' : 's355h');
+}
+
 export type PickOutcome =
   | { readonly ok: true; readonly section: PickedSection }
   | { readonly ok: false; readonly message: string };

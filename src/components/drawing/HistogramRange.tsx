@@ -11,6 +11,7 @@ import {
   type Range,
 } from './histogram/histogram';
 import { ticksPath } from './marks/paths';
+import { plumbPath } from './strip/plumb-path';
 import { useWidth } from './use-width';
 
 export type HistogramRangeProps = {
@@ -33,6 +34,10 @@ const BASE = 74;
 const TALLEST = 60;
 const MARGIN = 14;
 const LINE = BASE + 37;
+/** The baseline of the axis's figures. */
+const FIGURES = BASE + 17;
+
+const stopText = (stop: number): string => String(Number(stop.toPrecision(6)));
 
 type Scale = { toX: (value: number) => number; toValue: (x: number) => number; width: number };
 
@@ -77,17 +82,21 @@ function Bars({
   );
 }
 
+function stopsOf({ from, to }: Bins, width: number): number[] {
+  const step = roundStep((44 * (to - from)) / (width - 2 * MARGIN));
+  const first = Math.ceil(from / step);
+  return Array.from({ length: Math.floor(to / step) - first + 1 }, (_, i) => (first + i) * step);
+}
+
 function Axis({ bins, scale: { toX, width } }: { bins: Bins; scale: Scale }) {
-  const step = roundStep((44 * (bins.to - bins.from)) / (width - 2 * MARGIN));
-  const first = Math.ceil(bins.from / step);
-  const stops = Array.from({ length: Math.floor(bins.to / step) - first + 1 }, (_, i) => (first + i) * step);
+  const stops = stopsOf(bins, width);
   return (
     <>
       <path className="thin" d={`M${MARGIN} ${BASE}H${width - MARGIN}`} />
       <path className="fine" d={stops.map((stop) => `M${toX(stop)} ${BASE}v5`).join('')} />
       {stops.map((stop) => (
-        <text key={stop} x={toX(stop)} y={BASE + 17} textAnchor="middle" className="axis">
-          {Number(stop.toPrecision(6))}
+        <text key={stop} x={toX(stop)} y={FIGURES} textAnchor="middle" className="axis">
+          {stopText(stop)}
         </text>
       ))}
     </>
@@ -98,6 +107,12 @@ function CursorMark({ cursor, scale, ...props }: HistogramRangeProps & { cursor:
   const { range, bins, step, name, unit, onRange } = props;
   const value = range[cursor];
   const x = scale.toX(value);
+  const figures = stopsOf(bins, scale.width).map((stop) => ({
+    x: scale.toX(stop),
+    y: FIGURES,
+    text: stopText(stop),
+    anchor: 'middle' as const,
+  }));
   const drag = (event: PointerEvent<SVGElement>) => {
     const box = event.currentTarget.ownerSVGElement?.getBoundingClientRect();
     if (!box || box.width === 0) return;
@@ -128,7 +143,7 @@ function CursorMark({ cursor, scale, ...props }: HistogramRangeProps & { cursor:
       onPointerMove={(event) => event.currentTarget.hasPointerCapture(event.pointerId) && drag(event)}
       onKeyDown={onKeyDown}
     >
-      <path className="plumb-line" d={`M${x} 12V${LINE}`} />
+      <path className="plumb-line" d={plumbPath(x, [[12, LINE]], figures)} />
       <path className="plumb-bob" d={`M${x - 7} 4h14v8l-7 7l-7 -7z`} />
       {/* Each grip reaches away from the other cursor, so that both can be taken hold of where they stand close. */}
       <rect x={cursor === 'low' ? x - 22 : x - 6} y={0} width={28} height={HEIGHT} className="grip" />

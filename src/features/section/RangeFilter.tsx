@@ -16,6 +16,8 @@ interface RangeFilterProps {
   readonly measure: Ranged;
   readonly state: PageState;
   readonly system: UnitSystemName;
+  /** Every section: the axis is theirs where none is left. */
+  readonly items: readonly SectionItem[];
   /** The sections before any range, and those that meet every range. */
   readonly base: readonly SectionItem[];
   readonly meeting: readonly SectionItem[];
@@ -87,11 +89,14 @@ export function nudged(
 }
 
 /** Depth or mass: two cursors over a histogram, and a field at each end that does the same. */
-export function RangeFilter({ measure, state, system, base, meeting, onBound }: RangeFilterProps) {
+export function RangeFilter({ measure, state, system, items, base, meeting, onBound }: RangeFilterProps) {
   const field = FIELD[measure];
   const values = useMemo(() => shownValues(base, measure, system), [base, measure, system]);
   const met = useMemo(() => shownValues(meeting, measure, system), [meeting, measure, system]);
-  const bins = useMemo(() => binsOf(values), [values]);
+  const bins = useMemo(
+    () => binsOf(values.length > 0 ? values : shownValues(items, measure, system)),
+    [values, items, measure, system],
+  );
   const bound = (end: 'min' | 'max', word: string) => (
     <NumberBound
       label={`${word} ${measure}`}

@@ -15,14 +15,15 @@ interface SectionFiltersProps {
   readonly onState: (change: (state: PageState) => PageState) => void;
   readonly system: UnitSystemName;
   readonly editions: readonly EditionView[];
+  readonly items: readonly SectionItem[];
   readonly base: readonly SectionItem[];
   readonly meeting: readonly SectionItem[];
 }
 
 /** The head of the sections page: what a section is asked to be. */
 export function SectionFilters(props: SectionFiltersProps) {
-  const { state, onState, system, base, meeting } = props;
-  const ranges = { state, system, base, meeting };
+  const { state, onState, system, items, base, meeting } = props;
+  const ranges = { state, system, items, base, meeting };
   const onBound = (bounds: readonly (readonly [Bound, number | null])[]) =>
     onState((before) => bounds.reduce((now, [name, value]) => withBound(now, name, value), before));
   return (

@@ -42,7 +42,13 @@ export function SectionSearch(props: SectionSearchProps) {
 
   return (
     <>
-      <SectionFilters {...{ state, system, editions }} base={found.base} meeting={rows} onState={setState} />
+      <SectionFilters
+        {...{ state, system, editions }}
+        items={found.items}
+        base={found.base}
+        meeting={rows}
+        onState={setState}
+      />
       <ResultLine
         {...{ view, all, query, system }}
         said={found.said}
@@ -89,7 +95,14 @@ function NoSection({ state, onClear }: { state: PageState; onClear: () => void }
           ? 'Widen a range, or take it out; the histograms show where the sections are.'
           : 'Check the designation, or choose another shape or table.'}
       </p>
-      <Button onClick={onClear}>Clear all</Button>
+      <Button
+        onClick={() => {
+          onClear();
+          document.querySelector<HTMLElement>('[data-search]')?.focus();
+        }}
+      >
+        Clear all
+      </Button>
     </div>
   );
 }

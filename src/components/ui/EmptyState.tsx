@@ -10,9 +10,9 @@ interface EmptyStateProps {
 /** Nothing yet: construction lines show where the drawing will be. */
 export function EmptyState({ title, children, actions }: EmptyStateProps) {
   return (
-    <div className="relative grid justify-items-center overflow-hidden">
+    <div className="relative grid justify-items-center overflow-hidden md:min-h-440 md:content-start">
       <ConstructionLines />
-      <div className="relative mt-232 mb-44 max-w-560 bg-paper px-26 pt-6 pb-10 text-center max-md:mt-0 max-md:mb-14 max-md:px-12">
+      <div className="relative mt-252 mb-44 max-w-560 bg-paper px-26 pt-6 pb-10 text-center max-md:mt-0 max-md:mb-14 max-md:px-12">
         <h2 className="text-[1.625rem] leading-32 font-light">{title}</h2>
         <p className="mt-4 text-zone font-normal text-ink-2">{children}</p>
         {actions && <div className="mt-14 flex flex-wrap justify-center gap-8">{actions}</div>}

@@ -31,11 +31,10 @@ export interface TitleBlockProps {
 /** Bottom right of every sheet: whose it is, where it stands, and the one main action. */
 export function TitleBlock(props: TitleBlockProps) {
   const { org, orgNote, jobNumber, kind, title, status, reference, revision, revisions, others } = props;
-  const { revisionLabel = 'Rev' } = props;
   const identity = status !== undefined || reference !== undefined || revision !== undefined;
   return (
     <section id="title-block" data-title-block tabIndex={-1} aria-label="Title block" className="title-block">
-      {revisions && revisions.length > 0 && <RevisionList rows={revisions} label={revisionLabel} />}
+      {revisions && revisions.length > 0 && <RevisionList rows={revisions} label={revisionLabelOf(props)} />}
       {jobNumber === undefined ? (
         <div className="col-span-6 flex items-center gap-9 py-8">
           <span className="text-zone font-normal">{org}</span>
@@ -58,22 +57,44 @@ export function TitleBlock(props: TitleBlockProps) {
           <Compartment span="col-span-2" label="Date" value={props.date} />
         </>
       )}
-      {identity && (
-        <>
-          <div className="col-span-3">
-            <Label>Status</Label>
-            <div className="pt-5">
-              {status ? <StatusStamp status={status} word={props.statusWord} /> : <Unsigned />}
-            </div>
-          </div>
-          <Compartment span="col-span-2" label="Ref" value={reference} size={refSize(reference)} />
-          <Compartment span="col-span-1" label={revisionLabel} value={revision ?? '–'} size="text-revision" />
-        </>
-      )}
+      {identity && <Identity {...props} />}
       {props.children}
       {props.action && <MainAction action={props.action} />}
       {others && others.length > 0 && <OtherActions actions={others} />}
     </section>
+  );
+}
+
+const revisionLabelOf = ({ revisionLabel = 'Rev' }: TitleBlockProps): string => revisionLabel;
+
+/** Where it stands: status, reference and revision, as far as it has them. */
+function Identity(props: TitleBlockProps) {
+  const { status, statusWord, reference, revision } = props;
+  return (
+    <>
+      {status && (
+        <div className="col-span-3">
+          <Label>Status</Label>
+          <div className="pt-5">
+            <StatusStamp status={status} word={statusWord} />
+          </div>
+        </div>
+      )}
+      <Compartment
+        span={status ? 'col-span-2' : revision ? 'col-span-5' : 'col-span-6'}
+        label="Ref"
+        value={reference}
+        size={refSize(reference)}
+      />
+      {(status || revision) && (
+        <Compartment
+          span="col-span-1"
+          label={revisionLabelOf(props)}
+          value={revision ?? '–'}
+          size="text-revision"
+        />
+      )}
+    </>
   );
 }
 

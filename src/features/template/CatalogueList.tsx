@@ -12,7 +12,7 @@ interface ListProps {
 }
 
 const COLUMNS =
-  'md:grid-cols-[250px_minmax(0,1fr)_116px_92px_146px] md:max-lg:grid-cols-[244px_minmax(0,1fr)_106px_84px_142px]';
+  'md:grid-cols-[258px_minmax(0,1fr)_116px_92px_146px] md:max-lg:grid-cols-[244px_minmax(0,1fr)_106px_84px_142px]';
 
 /** The templates found, drawn at their defaults with the moment shaded. */
 export function CatalogueList({ shown, selected, onChoose }: ListProps) {
@@ -57,9 +57,9 @@ function Row({ match: { entry, marks }, isSelected, onChoose }: RowProps) {
       data-row={slug}
       onClick={() => onChoose(slug)}
       onFocus={() => onChoose(slug)}
-      className={`relative grid min-h-90 items-center border-b border-rule max-md:grid-cols-[minmax(0,1fr)_auto] max-md:py-8 [&>*]:px-12 [&>*]:py-8 max-md:[&>*]:py-3 ${COLUMNS} ${isSelected ? 'bg-ochre-wash shadow-[inset_3px_0_0_var(--color-ochre)]' : 'hover:bg-paper-2'}`}
+      className={`relative grid min-h-90 items-center border-b border-rule max-md:grid-cols-[minmax(0,1fr)_auto] max-md:py-8 scroll-mb-60 [&>*]:px-12 [&>*]:py-8 max-md:[&>*]:py-3 ${COLUMNS} ${isSelected ? 'dimensioned-side' : 'hover:bg-paper-2'}`}
     >
-      <div className="max-md:col-span-2">
+      <div className="pl-20! max-md:col-span-2">
         <Schematic beam={schematic.beam} moment={schematic.moment} />
       </div>
       <div className="max-md:col-span-2">

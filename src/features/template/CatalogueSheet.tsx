@@ -41,10 +41,17 @@ export function CatalogueSheet({ data, asked }: CatalogueProps) {
         {shown.length > 0 ? (
           <CatalogueList shown={shown} selected={slug} onChoose={catalogue.choose} />
         ) : (
-          <Nothing isEmpty={cards.length === 0} query={query} onClear={catalogue.clear} />
+          <Nothing
+            isEmpty={cards.length === 0}
+            query={query}
+            onClear={() => {
+              catalogue.clear();
+              document.querySelector<HTMLElement>('[data-search]')?.focus();
+            }}
+          />
         )}
       </div>
-      {selected && <CatalogueSide practice={practice} card={selected} />}
+      <CatalogueSide practice={practice} card={selected} />
       {selected && <Strip card={selected} />}
     </div>
   );

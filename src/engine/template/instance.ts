@@ -9,7 +9,7 @@ import {
 import { readQuantity } from '../quantity/index';
 import type { Template } from './document';
 import { evaluateNumber, evaluateTruth, type Scope } from './evaluate';
-import { loadOf, loadShares, type NamedLoad, nameOf } from './loads';
+import { loadOf, loadShares, loadSizes, type NamedLoad, nameOf } from './loads';
 import type { ParameterFault } from './measured';
 import { judgeRules, type RuleOutcome } from './rules';
 import { scopeOf } from './scope';
@@ -70,7 +70,10 @@ export function instantiate(
   const rules = judgeRules(template, scope, { depth: options.depth, ga: options.ga });
   const broken = rules.filter(({ state, severity }) => state === 'broken' && severity === 'block');
   if (broken.length > 0) return { ok: false, faults: broken.map(toFault) };
-  const shares = loadShares(template, values, ei);
+  // A load of nothing would only stand in the derivation as 0 × L.
+  const shares = loadShares(template, values, ei).filter((share) =>
+    loadSizes(loadOf(share)).some((size) => size !== 0),
+  );
   const beam = beamOf(template, scope, options);
   const { selfWeight } = options;
   const across = template.beam.own_weight ? evaluateNumber(template.beam.own_weight.tree, scope) : 1;

@@ -144,6 +144,16 @@ describe('an instance', () => {
     expect(split.scope.get('w')).toBe(9120);
   });
 
+  test('leaves out a load of nothing, and the group that has none of it', () => {
+    const { beam, loadNames } = instanceAt(points, { w: { G: 0, Q: 2000 } });
+    expect(beam.loads.map(({ kind, group }) => [kind, group])).toEqual([
+      ['line', 'Q'],
+      ['point', 'G'],
+      ['point', 'G'],
+    ]);
+    expect(loadNames).toHaveLength(3);
+  });
+
   test('adds the section’s own weight over the whole beam', () => {
     const { beam, loadNames } = instanceAt(canopy, {}, { selfWeight: 317 });
     expect(beam.loads.at(-1)).toEqual({ kind: 'line', from: 0, to: 7.8, w0: 317, w1: 317, group: 'G' });

@@ -17,7 +17,7 @@ interface RedundantChoiceProps {
 
 /** Every set of redundants as a card: what is taken away, and how the beam that is left sags. */
 export function RedundantChoice({ beam, solution, chosen, onChoose }: RedundantChoiceProps) {
-  const { open, barred } = useMemo(() => releaseChoices(beam), [beam]);
+  const { open, barred } = useMemo(() => releaseChoices(beam, chosen), [beam, chosen]);
   if (open.length === 0)
     return (
       <p className="text-ink-2">

@@ -36,6 +36,13 @@ describe('the choice of redundant', () => {
     expect(barred.map(({ key }) => key)).toContain('0v+1v');
   });
 
+  test('of more sets than a page holds has the beam’s own and the one in use first', () => {
+    const beam = beamOf('four-equal-spans-patterns');
+    const keys = releaseChoices(beam, '2v+3v+4v').open.map(({ key }) => key);
+    expect(keys.slice(0, 2)).toEqual(['1m+2m+3m', '2v+3v+4v']);
+    expect(new Set(keys).size).toBe(24);
+  });
+
   test('stays the same moment when the span changes', () => {
     const [choice] = releaseChoices(beamOf('two-equal-spans-uniform')).open;
     const releases = readReleases(releaseKey(choice?.releases ?? []));

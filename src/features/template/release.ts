@@ -4,6 +4,7 @@ import {
   type Beam,
   checkRedundants,
   type DisplacedShape,
+  defaultRedundants,
   eligibleRedundants,
   type Redundant,
   releaseMechanism,
@@ -55,10 +56,13 @@ export interface BarredChoice extends ReleaseChoice {
 const MOST_SETS = 24;
 const MOST_BARRED = 6;
 
-/** Every set of redundants that may be released, and what a person could think of but may not. */
-export function releaseChoices(beam: Beam): { open: ReleaseChoice[]; barred: BarredChoice[] } {
+/**
+ * Every set of redundants that may be released, and what a person could think of but may not. `chosen` is the key of
+ * the set in use.
+ */
+export function releaseChoices(beam: Beam, chosen = ''): { open: ReleaseChoice[]; barred: BarredChoice[] } {
   if (beam.degree === 0) return { open: [], barred: [] };
-  const open = [...take(admissibleSets(beam), MOST_SETS)].map((set) => toChoice(beam, set));
+  const open = openChoices(beam, chosen);
   const known = new Set(open.map(({ key }) => key));
   const thinkable = beam.degree === 1 ? components(beam).map((one) => [one]) : pairsAmong(beam);
   const barred = thinkable
@@ -71,6 +75,18 @@ export function releaseChoices(beam: Beam): { open: ReleaseChoice[]; barred: Bar
       return [{ ...choice, reason: fault.message, motion }];
     });
   return { open, barred: barred.slice(0, MOST_BARRED) };
+}
+
+/** Where there are more than a page holds, the beam's own choice and the one in use are first among them. */
+function openChoices(beam: Beam, chosen: string): ReleaseChoice[] {
+  const sets = [...take(admissibleSets(beam), MOST_SETS + 1)].map((set) => toChoice(beam, set));
+  if (sets.length <= MOST_SETS) return sets;
+  const inUse = readReleases(chosen).map((release) => toRedundant(beam, release));
+  const first = [defaultRedundants(beam), inUse]
+    .filter((set) => checkRedundants(beam, set).length === 0)
+    .map((set) => toChoice(beam, set));
+  const byKey = new Map([...first, ...sets].map((choice) => [choice.key, choice]));
+  return [...byKey.values()].slice(0, MOST_SETS);
 }
 
 function* take<T>(all: Iterable<T>, most: number): Generator<T> {

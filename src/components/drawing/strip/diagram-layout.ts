@@ -91,6 +91,7 @@ function peakText(context: Context, quantity: Quantity, peak: Peak): string {
   const text = `${figure(format, PURPOSE[quantity], shown)} ${place}${of}`;
   if (quantity !== 'deflection' || peak.rank !== 0) return text;
   const span = spanAt(beam, peak.x);
+  if (span.length === 0) return text; // a support that moves, and no deflection of a span
   return `${text}, ${span.words} / ${Math.floor(span.length / Math.abs(peak.value))}`;
 }
 

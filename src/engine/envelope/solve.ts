@@ -15,7 +15,8 @@ export type EnvelopeSolution = {
   readonly envelope: Envelope;
   /** What the envelope stands on. */
   readonly solved: readonly SolvedCase[];
-  /** Every arrangement that governs anything, solved as one beam. */
+  /** Every arrangement that governs anything, and all of them solved, each as one beam. */
+  readonly governing: readonly LoadArrangement[];
   arrangements(): (LoadArrangement & SolvedCase & { readonly lifted: number[] })[];
 };
 
@@ -31,13 +32,10 @@ export function solveEnvelope(task: EnvelopeTask, positions: readonly number[]):
   const elementary = solved.map(({ solution }) => solution);
   if (liftOff.length === 0) {
     const envelope = superposedEnvelope(sources, elementary, cases, positions);
-    const arrangement = (of: LoadArrangement) => ({
-      ...of,
-      ...solveArrangement(prepared, task, of),
-      lifted: [],
-    });
-    const arrangements = () => governingArrangements(task, envelope).map(arrangement);
-    return { ok: true, value: { envelope, solved, arrangements } };
+    const governing = governingArrangements(task, envelope);
+    const arrangements = () =>
+      governing.map((of) => ({ ...of, ...solveArrangement(prepared, task, of), lifted: [] }));
+    return { ok: true, value: { envelope, solved, governing, arrangements } };
   }
   const contact = new ContactBeam(beam, liftOff, redundants);
   const groups = beam.supports.map((_, support) =>
@@ -50,13 +48,11 @@ export function solveEnvelope(task: EnvelopeTask, positions: readonly number[]):
   const found = restingEnvelope(task, contact, positions, groups);
   if (!found.ok) return { ok: false, faults: [liftOffFault(task, found)] };
   const { envelope } = found;
-  const arrangements = governingArrangements(task, envelope).map((of) => ({
-    ...of,
-    ...rested(contact, task, of),
-  }));
+  const governing = governingArrangements(task, envelope);
+  const arrangements = governing.map((of) => ({ ...of, ...rested(contact, task, of) }));
   return {
     ok: true,
-    value: { envelope, solved: [...solved, ...arrangements], arrangements: () => arrangements },
+    value: { envelope, solved: [...solved, ...arrangements], governing, arrangements: () => arrangements },
   };
 }
 

@@ -11,10 +11,12 @@ export const LIMITS = {
   stations: 5001,
   /** Chosen ones: each may reach over the whole beam, so that the work grows with their cube. */
   redundants: 120,
+  combinations: 200,
+  patterns: 60,
 } as const;
 
 /** A JSON number in SI, or what a person types, with its unit. */
-const quantity = (dimension: DimensionName) =>
+export const quantity = (dimension: DimensionName) =>
   z
     .union([z.number(), z.string()], {
       error: ({ input }) =>
@@ -31,9 +33,9 @@ const quantity = (dimension: DimensionName) =>
       return z.NEVER;
     });
 
-const position = quantity('length');
+export const position = quantity('length');
 const shearStiffness = quantity('shear_stiffness').nullable().optional();
-const group = z.string().min(1).max(60).optional();
+export const group = z.string().min(1).max(60);
 
 const Segment = z.strictObject({
   from: position,
@@ -42,7 +44,7 @@ const Segment = z.strictObject({
   ga: shearStiffness,
 });
 
-const Support = z.strictObject({
+export const Support = z.strictObject({
   at: position,
   kind: z.enum(SUPPORT_KINDS),
   kv: quantity('spring').optional(),
@@ -52,43 +54,51 @@ const Support = z.strictObject({
 });
 
 const lineLoad = quantity('line_load');
-const Load = z.discriminatedUnion('kind', [
-  z.strictObject({ kind: z.literal('point'), at: position, p: quantity('force'), group }),
-  z.strictObject({
-    kind: z.literal('line'),
-    from: position,
-    to: position,
-    w0: lineLoad,
-    w1: lineLoad,
-    group,
-  }),
-  z.strictObject({ kind: z.literal('couple'), at: position, m: quantity('moment'), group }),
-  z.strictObject({
-    kind: z.literal('curvature'),
-    from: position,
-    to: position,
-    kappa: quantity('curvature'),
-    group,
-  }),
-]);
+
+/** A load, its group as the request has it: optional where nothing is combined. */
+export const loadSchema = <G extends z.ZodType>(inGroup: G) =>
+  z.discriminatedUnion('kind', [
+    z.strictObject({ kind: z.literal('point'), at: position, p: quantity('force'), group: inGroup }),
+    z.strictObject({
+      kind: z.literal('line'),
+      from: position,
+      to: position,
+      w0: lineLoad,
+      w1: lineLoad,
+      group: inGroup,
+    }),
+    z.strictObject({ kind: z.literal('couple'), at: position, m: quantity('moment'), group: inGroup }),
+    z.strictObject({
+      kind: z.literal('curvature'),
+      from: position,
+      to: position,
+      kappa: quantity('curvature'),
+      group: inGroup,
+    }),
+  ]);
 
 export const Redundant = z.discriminatedUnion('component', [
   z.strictObject({ support: z.int().min(0), component: z.literal(['vertical', 'rotation']) }),
   z.strictObject({ at: position, component: z.literal('moment') }),
 ]);
 
-/** The body of POST /api/v1/beams/solve. Numbers are SI; a quantity may be text with its unit instead. */
-export const solveRequest = z.strictObject({
+/** All of a beam but its supports and loads. */
+export const beamFields = {
   length: position,
   segments: z.array(Segment).max(LIMITS.segments).optional(),
   ei: quantity('bending_stiffness').optional(),
   ga: shearStiffness,
-  supports: z.array(Support).max(LIMITS.supports),
   hinges: z.array(position).max(LIMITS.hinges).optional(),
-  loads: z.array(Load).max(LIMITS.loads).optional(),
   redundants: z.array(Redundant).max(LIMITS.redundants).optional(),
   stations: z.union([z.int().min(2).max(LIMITS.stations), z.array(position).max(LIMITS.stations)]).optional(),
   horizontal: z.literal('ignore').optional(),
+};
+
+/** The body of POST /api/v1/beams/solve. Numbers are SI; a quantity may be text with its unit instead. */
+export const solveRequest = z.strictObject({
+  ...beamFields,
+  supports: z.array(Support).max(LIMITS.supports),
+  loads: z.array(loadSchema(group.optional())).max(LIMITS.loads).optional(),
 });
 
 export type SolveRequest = z.output<typeof solveRequest>;

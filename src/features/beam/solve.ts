@@ -50,21 +50,30 @@ function prove(beam: Beam, redundants: readonly Redundant[] | undefined): Readin
     const largest = Math.max(proof.equilibrium, proof.compatibility, proof.agreement);
     return unproven(`Its proof is off by ${largest.toPrecision(2)}, more than ${proofLimit(beam)}.`);
   } catch (error) {
-    if (error instanceof SingularMatrix && redundants) {
-      const name = nameRedundant(beam, redundants[error.row]!);
-      const message = `Among these redundants, ${name} repeats the others to within rounding. Choose another set.`;
-      const path = ['redundants', error.row];
-      return { ok: false, faults: [{ path, code: 'inadmissible_redundants', message }] };
-    }
-    if (error instanceof SingularMatrix || error instanceof SingularStiffness) {
-      return unproven('It is beyond the digits that are carried.');
-    }
-    throw error;
+    return unsolvable(error, beam, redundants);
   }
 }
 
+/** What a system of equations that cannot be solved means for the person; any other error is thrown on. */
+export function unsolvable(
+  error: unknown,
+  beam: Beam,
+  redundants: readonly Redundant[] | undefined,
+): { ok: false; faults: Fault[] } {
+  if (error instanceof SingularMatrix && redundants?.[error.row]) {
+    const name = nameRedundant(beam, redundants[error.row]!);
+    const message = `Among these redundants, ${name} repeats the others to within rounding. Choose another set.`;
+    const path = ['redundants', error.row];
+    return { ok: false, faults: [{ path, code: 'inadmissible_redundants', message }] };
+  }
+  if (error instanceof SingularMatrix || error instanceof SingularStiffness) {
+    return unproven('It is beyond the digits that are carried.');
+  }
+  throw error;
+}
+
 /** Points or stiffnesses too far apart in size are all that is known to bring this about. */
-function unproven(why: string): { ok: false; faults: Fault[] } {
+export function unproven(why: string): { ok: false; faults: Fault[] } {
   const message = `There is no result that can be trusted. ${why} Look for points that almost coincide, and for stiffnesses that are far apart.`;
   return { ok: false, faults: [{ path: [], code: 'unproven', message }] };
 }

@@ -74,11 +74,14 @@ function Movement({
   named,
   x,
   y,
+  inward,
   format,
 }: {
   named: LetteredSupport;
   x: number;
   y: number;
+  /** Towards the member, where its right end leaves no room for words. */
+  inward: boolean;
   format: DrawingFormat;
 }) {
   const { vertical, rotation } = named.support;
@@ -97,7 +100,7 @@ function Movement({
       {rise !== 0 && (
         <path className="load-point" d={arrowPath(x, down ? y : y + 18, x, down ? y + 18 : y, 7, 2)} />
       )}
-      <text x={x + 8} y={y + 14} className="figure">
+      <text x={inward ? x - 8 : x + 8} y={y + 14} textAnchor={inward ? 'end' : 'start'} className="figure">
         {words.join(', ')}
       </text>
     </>
@@ -144,6 +147,7 @@ function SupportPlace({
         named={named}
         x={x}
         y={layout.bottom + (support.kind === 'fixed' ? 32 : 36) * frame.supportScale}
+        inward={end === 'right'}
         format={format}
       />
     </>

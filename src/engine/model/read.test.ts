@@ -175,6 +175,13 @@ describe('readBeam', () => {
       { supports: [{ at: 0, kind: 'fixed', rise: Infinity }] },
       ['supports.0.rise not_finite'],
     ],
+    ['a length of nothing', { length: 1e-21 }, ['length out_of_range']],
+    ['a hinge nowhere', { hinges: [Number.NaN] }, ['hinges.0 not_finite']],
+    [
+      'a spring whose ground is nowhere',
+      { supports: [{ at: 0, kind: 'free', kv: 1, rise: Number.NaN }] },
+      ['supports.0.rise not_finite'],
+    ],
     ['no stiffness', { ei: undefined }, ['ei required']],
     ['EI of zero', { ei: 0 }, ['ei not_positive']],
     ['a negative GA', { ga: -1 }, ['ga not_positive']],
@@ -346,6 +353,11 @@ describe('stability', () => {
         hinges: [2, 4, 7],
       },
       'The part between 2.000 m and 4.000 m turns about the hinge at 2.000 m, the part between 4.000 m and 7.000 m turns about the hinge at 7.000 m.',
+    ],
+    [
+      'a part that hangs on a part that turns itself',
+      { supports: [{ at: 2, kind: 'pin' }], hinges: [4] },
+      'The part between 4.000 m and 9.000 m turns about the hinge at 4.000 m.',
     ],
     [
       'a guided part hung on a part that turns',

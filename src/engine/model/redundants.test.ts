@@ -262,6 +262,38 @@ describe('checkRedundants', () => {
     );
   });
 
+  test('a moment beside a point of the beam is brought to that point', () => {
+    const of = beam({
+      ei: undefined,
+      segments: [
+        { from: 0, to: 2, ei: 1 },
+        { from: 2, to: 9, ei: 2 },
+      ],
+      supports: [
+        { at: 0, kind: 'fixed' },
+        { at: 3, kind: 'roller' },
+        { at: 9, kind: 'fixed' },
+      ],
+      hinges: [8],
+      loads: [
+        { kind: 'point', at: 4, p: 1 },
+        { kind: 'line', from: 5, to: 6, w0: 1, w1: 1 },
+      ],
+    });
+    for (const point of [0, 2, 3, 4, 5, 6, 8, 9]) {
+      expect(placeRedundant(of, moment(point + 3e-12))).toEqual(moment(point));
+      expect(placeRedundant(of, moment(point - 3e-12))).toEqual(moment(point));
+    }
+    expect(placeRedundant(of, moment(7 + 3e-12))).toEqual(moment(7 + 3e-12));
+    expect(checkRedundants(of, [moment(3 + 3e-12), rotation(0)])).toEqual([]);
+  });
+
+  test('a hinge made by a release is what the rest turns about', () => {
+    expect(words(propped, [moment(8)])).toContain(
+      'The part between 8.000 m and 9.000 m turns about the released moment at 8.000 m.',
+    );
+  });
+
   test('the mechanism that is left is drawn', () => {
     const [fault] = checkRedundants(fixedEnds, [vertical(0), vertical(1)]);
     expect(fault?.motion).toEqual([

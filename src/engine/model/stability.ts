@@ -60,9 +60,9 @@ export function findMotion({ length, joints }: Frame): MovingPart[] | null {
   return follow(bodies, length, freedom !== 'free' ? freedom.about : bodies.length > 1 ? from : null);
 }
 
+/** Joints come one by one, so that what turns about a place turns about one at its left. */
 function holdVertical(freedom: Freedom, at: number): Freedom {
-  if (freedom === 'free') return { about: at };
-  return isAbout(freedom, at) ? freedom : 'held';
+  return freedom === 'free' ? { about: at } : 'held';
 }
 
 function holdRotation(freedom: Freedom): Freedom {

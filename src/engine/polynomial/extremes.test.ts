@@ -49,6 +49,19 @@ describe('extremes(p)', () => {
     expect(extremes(cubic).max.at).toEqual([1]);
   });
 
+  test('takes a sharp turning point a rounding before a break for the break, and one after it as well', () => {
+    // 1 − 10⁷ s² about a place 5·10⁻¹⁰ beside the break at 1: higher there by 2.5·10⁻¹², which is more than rounding.
+    const [sharp, beside] = [1e7, 5e-10];
+    const about = (from: number, top: number) => {
+      const s = from - top;
+      return [1 - sharp * s * s, -2 * sharp * s, -sharp];
+    };
+    const before = piecewise([0.9997, 1, 2], [about(0.9997, 1 - beside), [1 - sharp * beside ** 2]]);
+    expect(extremes(before).max.at).toEqual([1, 2]);
+    const after = piecewise([0, 1, 1.0003], [[1 - sharp * beside ** 2], about(1, 1 + beside)]);
+    expect(extremes(after).max.at).toEqual([0, 1]);
+  });
+
   test('takes rounding on a constant stretch for constant', () => {
     const still = piecewise([0, 1, 2], [[1], [1, -4e-17, 4e-17]]);
     expect(extremes(still).max.at).toEqual([0, 1, 2]);

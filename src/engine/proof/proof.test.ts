@@ -129,6 +129,15 @@ describe('where there is nothing to compare with', () => {
       'a free curvature of a simple span',
       { supports: [supports[0]!, supports[2]!], loads: [{ kind: 'curvature', from: 1, to: 4, kappa: 1e-3 }] },
     ],
+    [
+      'a free curvature of no length, beside a load',
+      {
+        loads: [
+          { kind: 'curvature', from: 2, to: 2, kappa: 1e9 },
+          { kind: 'point', at: 1, p: 3 },
+        ],
+      },
+    ],
   ];
   test.each(cases)('%s is proven', (_, more) => {
     const beam = read({ length: 6, ei: 1e7, supports, ...more });

@@ -18,6 +18,16 @@ import {
 
 const plain = (text: string) => text.replaceAll(/[\u00a0\u202f]/g, ' ');
 
+test('what is no number is shown as a dash', () => {
+  for (const nothing of [Number.NaN, Number.POSITIVE_INFINITY]) {
+    expect([formatNumber(nothing), formatFeetInches(nothing), formatUtilisation(nothing)]).toEqual([
+      '–',
+      '–',
+      '–',
+    ]);
+  }
+});
+
 describe('formatNumber', () => {
   test.each([
     [12.5, {}, '12.5'],

@@ -9,6 +9,22 @@ import {
   yieldStrength,
 } from './index';
 
+const EXAMPLE = {
+  id: 'x',
+  name: 'X',
+  kind: 'steel',
+  standard: 'S',
+  edition: '1',
+  clause: '1',
+  from_memory: true,
+  note: 'n',
+  e: '210 GPa',
+  g: '81 GPa',
+  density: '7850 kg/m3',
+  expansion: '12e-6 1/K',
+  strength: [{ fy: '355 MPa', fu: '470 MPa' }],
+};
+
 function material(id: string): Material {
   const found = materialFor(id);
   if (!found) throw new Error(id);
@@ -69,18 +85,24 @@ test('a list with a bare number is refused with the material and the field', () 
   expect(readMaterials({ materials: [EXAMPLE] })[0]?.e).toBe(2.1e11);
 });
 
-const EXAMPLE = {
-  id: 'x',
-  name: 'X',
-  kind: 'steel',
-  standard: 'S',
-  edition: '1',
-  clause: '1',
-  from_memory: true,
-  note: 'n',
-  e: '210 GPa',
-  g: '81 GPa',
-  density: '7850 kg/m3',
-  expansion: '12e-6 1/K',
-  strength: [{ fy: '355 MPa', fu: '470 MPa' }],
-};
+test.each<[string, unknown, string]>([
+  ['no list at all', null, 'material (list), materials: is no list'],
+  ['a list under no name', [EXAMPLE], 'material (list), materials: is no list'],
+  ['no id', { materials: [{ ...EXAMPLE, id: undefined }] }, 'material (no id), id: is no text'],
+  ['an empty name', { materials: [{ ...EXAMPLE, name: '' }] }, 'material x, name: is no text'],
+  ['no bands', { materials: [{ ...EXAMPLE, strength: [] }] }, 'material x, strength: is no list'],
+  [
+    'bands that are none',
+    { materials: [{ ...EXAMPLE, strength: '355 MPa' }] },
+    'material x, strength: is no list',
+  ],
+])('%s is refused with its place', (_name, list, message) => {
+  expect(() => readMaterials(list)).toThrow(MaterialListFault);
+  expect(() => readMaterials(list)).toThrow(message);
+});
+
+test('NDS timber gives its reference design values', () => {
+  const timber = material('24f-v4');
+  if (timber.kind !== 'timber_nds') throw new Error(timber.kind);
+  expect(elasticStrength(timber, 0.1)).toEqual({ bending: timber.fb, shear: timber.fv });
+});

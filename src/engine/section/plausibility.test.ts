@@ -1,6 +1,7 @@
 import fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
 import { type IDimensions, plausibilityFindings, sectionProperties, type Tabulated, tube } from './index';
+import { slipCause } from './slip';
 
 const OV260: IDimensions = { shape: 'i', h: 0.258, b: 0.13, tw: 0.0062, tf: 0.0098, r: 0.01 };
 const OPTIONS = { density: 7850, rootRadiusKnown: true };
@@ -61,6 +62,49 @@ describe('one slip is reported once, with its cause', () => {
     ]);
     expect(found[0]?.cause).toMatch(cause);
   });
+});
+
+test.each<[string, number, string, string | null]>([
+  ['an I_t that no thin strips have', right('j') * 3, 'warning', null],
+  [
+    'an I_t in in⁴ under cm⁴',
+    right('j') / 2.54 ** 4,
+    'error',
+    'The value looks like in⁴ under a heading of cm⁴',
+  ],
+  [
+    'an I_t in cm⁴ under in⁴',
+    right('j') * 2.54 ** 4,
+    'error',
+    'The value looks like cm⁴ under a heading of in⁴',
+  ],
+  [
+    'an I_t in mm⁴ under in⁴',
+    right('j') * 25.4 ** 4,
+    'error',
+    'The value looks like mm⁴ under a heading of in⁴',
+  ],
+])('%s is found', (_name, j, severity, cause) => {
+  expect(findings({ j })).toMatchObject([{ rule: 'torsion', severity, property: 'j', cause }]);
+});
+
+test('moduli that fit each other badly are a warning', () => {
+  const d: IDimensions = { ...OV260, r: 0 };
+  const { iMajor, wElMajor } = sectionProperties(d);
+  const found = plausibilityFindings(d, { iMajor, wElMajor, wPlMajor: 1.4 * wElMajor }, OPTIONS);
+  expect(found.filter(({ rule }) => rule === 'shape_factor')).toMatchObject([
+    { severity: 'warning', property: 'wPlMajor', formula: 'W_pl/W_el is 1.40; usual is 1.08 to 1.30' },
+  ]);
+});
+
+test.each([
+  [1.48816, 0, 'The value looks like kg/m under a heading of lb/ft'],
+  [1000, 0, 'The value is 10^3 times too large: look at the unit of its heading'],
+  [1.07, 4, null],
+  [0, 4, null],
+  [-1, 2, null],
+])('a value %d times its own, length to the power %d: %s', (ratio, power, cause) => {
+  expect(slipCause(ratio, power)).toBe(cause);
 });
 
 test('axes that differ by less than their values may are in no order', () => {

@@ -47,21 +47,20 @@ export function elementsOf(beam: Beam, points: readonly number[]): Element[] {
   });
 }
 
-/** What starts (or, taken away, ends) at a point: a load's intensity and its rate, a curvature, and how many there are. */
-type Onset = { intensity: Wide; rate: Wide; curvature: Wide; count: number };
+/** The line load and its rate, and the free curvature, right of a point; or what they change by there. */
+type Acting = { intensity: Wide; rate: Wide; curvature: Wide };
 
 /**
  * The line loads and the curvatures on each piece, in one walk along the points, so that many loads on many points cost
- * their sum and not their product. Where nothing acts, rounding leaves nothing either.
+ * their sum and not their product. What rounding leaves of a load beyond its end is 2⁻¹⁰² of it.
  */
 function actingOn(beam: Beam, points: readonly number[]) {
   const onsets = onsetsOf(beam, points);
   const loads: (readonly [Wide, Wide])[] = [];
   const curvatures: Wide[] = [];
-  let acting: Onset = NOTHING;
+  let acting: Acting = NOTHING;
   for (let k = 0; k < points.length - 1; k++) {
-    const count = acting.count + onsets[k]!.count;
-    acting = count === 0 ? NOTHING : joined(acting, onsets[k]!, 1);
+    acting = joined(acting, onsets[k]!, 1);
     const run = Wide.difference(points[k + 1]!, points[k]!);
     const end = acting.intensity.plus(acting.rate.times(run));
     loads.push([acting.intensity, end]);
@@ -71,35 +70,34 @@ function actingOn(beam: Beam, points: readonly number[]) {
   return { loads, curvatures };
 }
 
-const NOTHING: Onset = { intensity: Wide.ZERO, rate: Wide.ZERO, curvature: Wide.ZERO, count: 0 };
+const NOTHING: Acting = { intensity: Wide.ZERO, rate: Wide.ZERO, curvature: Wide.ZERO };
 
-function onsetsOf(beam: Beam, points: readonly number[]): Onset[] {
+function onsetsOf(beam: Beam, points: readonly number[]): Acting[] {
   const onsets = points.map(() => NOTHING);
   const index = new Map(points.map((x, k) => [x, k]));
-  const add = (x: number, onset: Onset, sense: 1 | -1) => {
+  const add = (x: number, change: Acting, sense: 1 | -1) => {
     const k = index.get(x)!;
-    onsets[k] = joined(onsets[k]!, onset, sense);
+    onsets[k] = joined(onsets[k]!, change, sense);
   };
   for (const load of beam.loads) {
     if (load.kind === 'point' || load.kind === 'couple' || load.from === load.to) continue;
     if (load.kind === 'curvature') {
-      const onset = { ...NOTHING, curvature: Wide.of(load.kappa), count: 1 };
-      add(load.from, onset, 1);
-      add(load.to, onset, -1);
+      const change = { ...NOTHING, curvature: Wide.of(load.kappa) };
+      add(load.from, change, 1);
+      add(load.to, change, -1);
     } else {
       const rate = Wide.difference(load.w1, load.w0).over(Wide.difference(load.to, load.from));
-      add(load.from, { ...NOTHING, intensity: Wide.of(load.w0), rate, count: 1 }, 1);
-      add(load.to, { ...NOTHING, intensity: Wide.of(load.w1), rate, count: 1 }, -1);
+      add(load.from, { ...NOTHING, intensity: Wide.of(load.w0), rate }, 1);
+      add(load.to, { ...NOTHING, intensity: Wide.of(load.w1), rate }, -1);
     }
   }
   return onsets;
 }
 
-const joined = (a: Onset, b: Onset, sense: 1 | -1): Onset => ({
+const joined = (a: Acting, b: Acting, sense: 1 | -1): Acting => ({
   intensity: a.intensity.plus(b.intensity.times(sense)),
   rate: a.rate.plus(b.rate.times(sense)),
   curvature: a.curvature.plus(b.curvature.times(sense)),
-  count: a.count + sense * b.count,
 });
 
 /**

@@ -135,6 +135,30 @@ describe('solveStiffness', () => {
     near(reactions[1]!.vertical, 2250);
   });
 
+  test('loads and curvatures that overlap, meet, and leave gaps act as each does alone', () => {
+    const L = 10;
+    const loads: Load[] = [
+      { kind: 'line', from: 1, to: 4, w0: 0.1, w1: 1e6 },
+      { kind: 'line', from: 4, to: 7, w0: 300, w1: -700 },
+      { kind: 'line', from: 2, to: 6, w0: 1 / 3, w1: 2 / 3 },
+      { kind: 'line', from: 8, to: 8, w0: 1e9, w1: 1e9 },
+      { kind: 'curvature', from: 3, to: 9, kappa: 1e-3 },
+      { kind: 'curvature', from: 5, to: 6, kappa: -2e-3 },
+      { kind: 'curvature', from: 7, to: 7, kappa: 1 },
+    ];
+    const supports = [support(0, HELD, HELD), support(L)];
+    const marks = [1, 2, 3, 4, 5, 6, 7, 8, 9].map((at): Load => ({ kind: 'point', at, p: 0 }));
+    const all = solveStiffness(beam(L, supports, [...loads, ...marks]));
+    const each = loads.map((load) => solveStiffness(beam(L, supports, [load, ...marks])));
+    all.pieces.forEach(({ middle }, k) => {
+      for (const quantity of ['shear', 'moment', 'slope', 'deflection'] as const) {
+        const parts = each.map(({ pieces }) => pieces[k]!.middle[quantity]);
+        const sum = parts.reduce((total, part) => total + part, 0);
+        near(middle[quantity], sum, 100 * Math.max(...parts.map(Math.abs)));
+      }
+    });
+  });
+
   test('a load on a support goes straight into it', () => {
     const { reactions, pieces } = solveStiffness(
       beam(4, [support(0), support(2), support(4)], [{ kind: 'point', at: 2, p: 5000 }]),

@@ -1,7 +1,7 @@
 import { describe, expect, test } from 'vitest';
 import { type BeamDocument, readBeam } from '../model/index';
 import { evaluate, magnitude } from '../polynomial/index';
-import { absoluteMoment, type Direction, influenceLine, type Wheel, worstTrain } from './index';
+import { absoluteMoment, type Direction, influenceLine, readWheels, type Wheel, worstTrain } from './index';
 import { trainEffect } from './train';
 
 function beamOf(length: number, supports: BeamDocument['supports'], hinges: number[] = []) {
@@ -260,4 +260,21 @@ test('trainEffect is nothing before the first wheel comes on and after the last 
   expect(effect.breaks.at(-1)).toBe(14);
   expect(evaluate(effect, 9)[0]).toBeCloseTo(2 * 1 + 3 * 2.5, 12);
   expect(magnitude(effect)).toBeGreaterThan(0);
+});
+
+test('readWheels refuses no wheel, one that pulls up, and one ahead of the front', () => {
+  expect(readWheels([])).toMatchObject({ ok: false, faults: [{ path: [], code: 'required' }] });
+  const wrong = readWheels([
+    { offset: 0, force: 1 },
+    { offset: -1, force: 0 },
+    { offset: Number.POSITIVE_INFINITY, force: Number.NaN },
+  ]);
+  expect(wrong.ok ? [] : wrong.faults.map(({ path, code }) => [...path, code].join(' '))).toEqual([
+    '1 offset out_of_range',
+    '1 force not_positive',
+    '2 offset out_of_range',
+    '2 force not_positive',
+  ]);
+  const right = [{ offset: 0, force: 1 }];
+  expect(readWheels(right)).toEqual({ ok: true, value: right });
 });

@@ -3,14 +3,18 @@ import { STANDARD_GRAVITY } from '../quantity/index';
 import type { DistributedMass, LumpedMass, Masses } from './types';
 
 /**
- * The mass of loads that are weights, w/g and P/g. A couple or a curvature has none, and neither has a load that pulls
- * up anywhere: `leftOut` are their places in the list.
+ * The mass of those loads that are weights, w/g and P/g. A couple or a curvature has none, and neither has a load that
+ * pulls up anywhere: `leftOut` are the places of such in the list.
  */
-export function massOfLoads(loads: readonly Load[]): { masses: Masses; leftOut: number[] } {
+export function massOfLoads(
+  loads: readonly Load[],
+  isWeight: (load: Load) => boolean,
+): { masses: Masses; leftOut: number[] } {
   const distributed: DistributedMass[] = [];
   const lumped: LumpedMass[] = [];
   const leftOut: number[] = [];
   loads.forEach((load, i) => {
+    if (!isWeight(load)) return;
     if (load.kind === 'point' && load.p >= 0) lumped.push({ at: load.at, mass: load.p / STANDARD_GRAVITY });
     else if (load.kind === 'line' && load.w0 >= 0 && load.w1 >= 0) {
       const { from, to, w0, w1 } = load;

@@ -253,14 +253,18 @@ describe('the estimate', () => {
 describe('masses', () => {
   test('of loads are those of the weights among them', () => {
     const g = 9.80665;
-    const { masses, leftOut } = massOfLoads([
-      { kind: 'point', at: 2, p: 100 * g },
-      { kind: 'line', from: 0, to: 4, w0: 10 * g, w1: 30 * g },
-      { kind: 'couple', at: 1, m: 5 },
-      { kind: 'curvature', from: 0, to: 1, kappa: 1 },
-      { kind: 'point', at: 3, p: -1 },
-      { kind: 'line', from: 0, to: 4, w0: 1, w1: -1 },
-    ]);
+    const { masses, leftOut } = massOfLoads(
+      [
+        { kind: 'point', at: 2, p: 100 * g, group: 'G' },
+        { kind: 'line', from: 0, to: 4, w0: 10 * g, w1: 30 * g, group: 'G' },
+        { kind: 'couple', at: 1, m: 5, group: 'G' },
+        { kind: 'curvature', from: 0, to: 1, kappa: 1, group: 'G' },
+        { kind: 'point', at: 3, p: -1, group: 'G' },
+        { kind: 'line', from: 0, to: 4, w0: 1, w1: -1, group: 'G' },
+        { kind: 'point', at: 3, p: 50 * g, group: 'Q' },
+      ],
+      ({ group }) => group === 'G',
+    );
     expect(leftOut).toEqual([2, 3, 4, 5]);
     expect(masses).toEqual({
       lumped: [{ at: 2, mass: expect.closeTo(100, 12) }],

@@ -67,7 +67,8 @@ describe.each(ENDPOINTS)('POST $path', ({ path, body, answer, wrong, pointer }) 
       token: tokens[0]!,
       json: { ...body, ...wrong },
     });
-    expect([status, headers.get('content-type')]).toEqual([422, 'application/problem+json']);
+    expect(status).toBe(422);
+    expect(headers.get('content-type')).toContain('application/problem+json');
     expect(json.errors).toMatchObject([{ pointer }]);
     const unknown = await ask('POST', path, { token: tokens[0]!, json: { ...body, lenght: 1 } });
     expect(unknown.json.errors).toMatchObject([{ pointer: '/lenght', code: 'unknown_field' }]);

@@ -1,6 +1,7 @@
 import { sql } from 'drizzle-orm';
 import {
   check,
+  date,
   foreignKey,
   index,
   integer,
@@ -29,12 +30,18 @@ export const document = pgTable(
     slug: text().notNull(),
     reference: text().notNull(),
     name: text().notNull(),
+    /** To be looked at again by this day: a warning on use from then on, and no new use once the grace is over. */
+    reviewBy: date({ mode: 'string' }),
+    graceDays: integer().notNull().default(90),
+    /** The revision of another document that this one was made from. */
+    derivedFromId: uuid(),
     createdAt: now(),
   },
   (table) => [
     primaryKey({ columns: [table.practiceId, table.id] }),
     uniqueIndex('document_slug').on(table.practiceId, table.kind, table.slug),
     uniqueIndex('document_reference').on(table.practiceId, table.reference),
+    check('document_grace_days', sql`${table.graceDays} between 0 and 3650`),
     check('document_slug_kebab', sql`${table.slug} ~ '^[a-z0-9]+(-[a-z0-9]+)*$'`),
     tenantPolicy('document'),
   ],
@@ -53,6 +60,8 @@ export const revision = pgTable(
     schemaVersion: integer().notNull(),
     engineVersion: text().notNull(),
     sha256: text().notNull(),
+    /** Counts the edits of a draft: what an edit says it was made on. */
+    version: integer().notNull().default(1),
     authorId: uuid().notNull(),
     reviewerId: uuid(),
     changeNote: text().notNull().default(''),

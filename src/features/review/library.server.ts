@@ -127,7 +127,7 @@ export const NO_USES: Uses = { members: 0, jobs: 0 };
 export async function usesByDocument(
   tx: Tx,
   practiceId: string,
-  kind: DocumentKind,
+  kind: PinnedKind,
 ): Promise<Map<string, Uses>> {
   const rows = await tx
     .select({ id: revision.documentId, members: countDistinct(member.id), jobs: countDistinct(member.jobId) })
@@ -144,4 +144,5 @@ const PINNED = {
   template: member.templateRevisionId,
   'section-table': section.revisionId,
   criteria: member.criteriaRevisionId,
-} as const satisfies Record<DocumentKind, unknown>;
+} as const;
+type PinnedKind = keyof typeof PINNED;

@@ -1,6 +1,12 @@
 import { type Action, may, type Person } from '@/features/account/permission';
 
-export const DOCUMENT_KINDS = ['template', 'section-table', 'criteria'] as const;
+export const DOCUMENT_KINDS = [
+  'template',
+  'section-table',
+  'criteria',
+  'combination-set',
+  'material-set',
+] as const;
 export type DocumentKind = (typeof DOCUMENT_KINDS)[number];
 
 export const REVISION_STATES = ['draft', 'in_review', 'issued', 'superseded', 'withdrawn'] as const;
@@ -54,3 +60,17 @@ export function stepsFor(
     return step.from.includes(revision.state) && may(person, REVISION_STEPS[name].action, revision);
   });
 }
+
+/** Of what a worker does for a revision: its proof, its impact. */
+export const RUN_STATES = ['queued', 'running', 'finished', 'failed'] as const;
+export type RunState = (typeof RUN_STATES)[number];
+
+/** What a member's owner decides when a revision that it pins is recalled. */
+export const RECALL_DECISIONS = ['unaffected', 'upgraded', 'redesigned', 'accepted', 'not_used'] as const;
+export type RecallDecision = (typeof RECALL_DECISIONS)[number];
+
+export const REQUEST_KINDS = ['request', 'defect'] as const;
+export type RequestKind = (typeof REQUEST_KINDS)[number];
+
+export const REQUEST_STATES = ['open', 'accepted', 'declined', 'done'] as const;
+export type RequestState = (typeof REQUEST_STATES)[number];

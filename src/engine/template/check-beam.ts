@@ -106,12 +106,17 @@ const scopeOfLoad = (template: Template, kinds: Kinds, load: LoadTemplate): Kind
 function loadFaults(template: Template, load: LoadTemplate, path: Path): TemplateFault[] {
   if (load.repeat !== undefined && !rowsOfLoad(template, load))
     return [unknownSymbol(load.repeat, [...path, 'repeat'])];
-  const columns = rowsOfLoad(template, load)?.columns.map(({ symbol }) => symbol);
-  const symbols = [...loadSymbols(template, load)].filter((symbol) => !columns || columns.includes(symbol));
-  if (symbols.length > 0 && symbols.length === loadSymbols(template, load).size) return [];
-  if (symbols.length > 0)
-    return [{ path, code: 'mixed', message: 'Size a repeated load by the columns of its list alone.' }];
-  return [{ path, code: 'no_group', message: 'Size this load by a parameter that has a load group.' }];
+  const own = rowsOfLoad(template, load)?.columns ?? template.parameters;
+  const all = [...loadSymbols(template, load)];
+  const symbols = all.filter((symbol) => own.some((one) => one.symbol === symbol));
+  if (symbols.length === 0)
+    return [{ path, code: 'no_group', message: 'Size this load by a parameter that has a load group.' }];
+  if (symbols.length === all.length) return [];
+  const message =
+    load.repeat === undefined
+      ? 'Size this load without the columns of a list. Repeat another over the list.'
+      : 'Size a repeated load by the columns of its list alone.';
+  return [{ path, code: 'mixed', message }];
 }
 
 function redundantFaults(beam: Beam, kinds: Kinds): TemplateFault[] {

@@ -25,7 +25,7 @@ export function MechanismSketch({ beam, motion, label, width = 232 }: MechanismS
   return (
     <SchematicFrame width={width} height={HEIGHT} label={label}>
       <SchematicMember beam={beam} toX={toX} size={SIZE} />
-      <SchematicLoads loads={beam.loads ?? []} toX={toX} base={BASE} scale={1} />
+      <SchematicLoads loads={beam.loads ?? []} length={beam.length} toX={toX} base={BASE} scale={1} />
       {motion ? (
         <path className="error-line heavy" d={displacedPath(motion, toX, BASE, REACH)} />
       ) : (

@@ -102,7 +102,14 @@ export function Schematic(props: SchematicProps) {
       {momentCurve && <path className="curve-moment schematic-curve" d={momentCurve.line} />}
       {shape && <path className="curve-deflection" d={shape.line} />}
       <SchematicMember beam={beam} toX={toX} size={size} />
-      <SchematicLoads loads={beam.loads ?? []} toX={toX} base={base} scale={size.loads} names={loadNames} />
+      <SchematicLoads
+        loads={beam.loads ?? []}
+        length={beam.length}
+        toX={toX}
+        base={base}
+        scale={size.loads}
+        names={loadNames}
+      />
       {mark && <SchematicMarks mark={mark} toX={toX} base={base} width={width} deflectedAt={deflectedAt} />}
       <NamedLengths rows={rows} toX={toX} base={base} />
     </SchematicFrame>

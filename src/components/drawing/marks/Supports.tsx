@@ -102,17 +102,18 @@ function Guided({ x, top, centre, underside, end, scale: k }: Seat) {
   );
 }
 
-/** Rotational spring: a spiral from the member to a wall. */
+/** Rotational spring: a spiral from the member to a wall; at an end it stands clear of what the end carries. */
 function Spiral({ x, centre, end, scale: k }: Seat) {
   const out = end === 'left' ? -1 : 1;
-  const face = x + out * 15 * k;
+  const hub = end ? x + out * 10 * k : x;
+  const face = hub + out * 13 * k;
   const thick = 7 * k;
   return (
     <>
-      <path className="medium" d={spiralPath(x, centre, out * 11 * k)} />
+      <path className="medium" d={spiralPath(hub, centre, out * 9 * k)} />
       <path
         className="medium"
-        d={`M${x + out * 11 * k} ${centre}H${face}M${face} ${centre - 10 * k}v${20 * k}`}
+        d={`M${x} ${centre}H${hub}M${hub + out * 9 * k} ${centre}H${face}M${face} ${centre - 10 * k}v${20 * k}`}
       />
       <path
         className="ground"

@@ -8,6 +8,8 @@ import { relativeHeight } from './schematic-layout';
 
 type Props = {
   loads: readonly Load[];
+  /** Of the beam, m. */
+  length: number;
   toX: Map1;
   base: number;
   scale: number;
@@ -103,6 +105,33 @@ function Points({ loads, toX, base, scale, names }: Props) {
   });
 }
 
+/** A couple's name stands over its arc: beside it within the span, and beyond the beam at an end. */
+function Couple({
+  at,
+  clockwise,
+  name,
+  toX,
+  base,
+  scale,
+  length,
+}: Props & { at: number; clockwise: boolean; name: string | undefined }) {
+  const radius = 10 * scale;
+  const x = toX(at);
+  const end = at < length * 1e-6 ? 'left' : at > length * (1 - 1e-6) ? 'right' : null;
+  const aside = { left: -2, right: 2, within: 12 * scale }[end ?? 'within'];
+  return (
+    <>
+      <Turn x={x} y={base} radius={radius} clockwise={clockwise} className="load-couple" />
+      <Name
+        x={x + aside}
+        y={end ? base - radius - 5 : base - radius}
+        text={name}
+        anchor={end === 'left' ? 'end' : 'start'}
+      />
+    </>
+  );
+}
+
 /** The loads of a small drawing: no figures, only their kind, place, sense and order of size. */
 export function SchematicLoads(props: Props) {
   const { loads, toX, base, scale, names } = props;
@@ -114,16 +143,7 @@ export function SchematicLoads(props: Props) {
         if (load.kind === 'couple' && load.m !== 0) {
           return (
             // biome-ignore lint/suspicious/noArrayIndexKey: a load is known by its place in the beam
-            <g key={index}>
-              <Turn
-                x={toX(load.at)}
-                y={base}
-                radius={10 * scale}
-                clockwise={load.m < 0}
-                className="load-couple"
-              />
-              <Name x={toX(load.at) + 12 * scale} y={base - 10 * scale} text={names?.[index]} />
-            </g>
+            <Couple key={index} {...props} at={load.at} clockwise={load.m < 0} name={names?.[index]} />
           );
         }
         if (load.kind === 'curvature' && load.kappa !== 0) {

@@ -378,4 +378,10 @@ describe('what rounding leaves of nothing', () => {
     expect([shear.max.value, shear.min.value, moment.max.value, moment.min.value]).toEqual([0, 0, 0, 0]);
     expect(contraflexure).toEqual([]);
   });
+
+  test('redundants that leave the beam indeterminate, or none of it, are no redundants', () => {
+    const built = beam({ length: 6, ei: 1e6, supports: [fixedAt(0), fixedAt(6)], loads: [] });
+    expect(() => solveBeam(built, [{ support: 0, component: 'vertical' }])).toThrow(RangeError);
+    expect(() => solveBeam(built, [])).toThrow('not statically determinate');
+  });
 });

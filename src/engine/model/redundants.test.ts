@@ -285,6 +285,13 @@ describe('checkRedundants', () => {
       expect(placeRedundant(of, moment(point - 3e-12))).toEqual(moment(point));
     }
     expect(placeRedundant(of, moment(7 + 3e-12))).toEqual(moment(7 + 3e-12));
+    const overhung = beam({
+      supports: [
+        { at: 2, kind: 'pin' },
+        { at: 7, kind: 'roller' },
+      ],
+    });
+    expect(placeRedundant(overhung, moment(3e-12))).toEqual(moment(0));
     expect(checkRedundants(of, [moment(3 + 3e-12), rotation(0)])).toEqual([]);
   });
 

@@ -1,6 +1,7 @@
 import fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
 import {
+  cornerRadii,
   depthOf,
   dimensionFaults,
   ImpossibleSection,
@@ -242,6 +243,7 @@ describe('closed forms', () => {
 
 describe('dimensions that describe no section', () => {
   test.each<[string, SectionDimensions]>([
+    ['a root of less than nothing', { shape: 'i', h: 0.3, b: 0.15, tw: 0.007, tf: 0.01, r: -0.001 }],
     ['a flange of nothing', { shape: 'i', h: 0.3, b: 0.15, tw: 0.007, tf: 0, r: 0.015 }],
     ['flanges that fill the depth', { shape: 'i', h: 0.03, b: 0.15, tw: 0.007, tf: 0.01, r: 0.015 }],
     ['a web wider than the flange', { shape: 'i', h: 0.3, b: 0.02, tw: 0.03, tf: 0.01, r: 0 }],
@@ -252,4 +254,17 @@ describe('dimensions that describe no section', () => {
     expect(dimensionFaults(d).length).toBeGreaterThan(0);
     expect(() => sectionProperties(d)).toThrow(ImpossibleSection);
   });
+});
+
+/** EN 10219-2:2006 Annex B and EN 10210-2:2006 Annex B, from memory: outer radius over the wall. */
+test.each([
+  [6, 'EN 10219', 2],
+  [6.3, 'EN 10219', 2.5],
+  [10, 'EN 10219', 2.5],
+  [12.5, 'EN 10219', 3],
+  [12.5, 'EN 10210', 1.5],
+] as const)('a wall of %d mm to %s has an outer radius of %d walls', (t, standard, ratio) => {
+  const { ro, ri } = cornerRadii(t / 1000, standard);
+  expect(ro / (t / 1000)).toBeCloseTo(ratio, 12);
+  expect(ro - ri).toBeCloseTo(standard === 'EN 10210' ? (0.5 * t) / 1000 : t / 1000, 12);
 });

@@ -1,7 +1,7 @@
 import { describe, expect, test } from 'vitest';
 import { DIMENSIONS } from '../quantity/index';
 import { dimensionOf, type Kind, ofDimension } from './dimension';
-import { BrokenExpression, evaluateExpression, type Scope } from './evaluate';
+import { BrokenExpression, evaluateExpression, evaluateTruth, type Scope } from './evaluate';
 import { parseExpression } from './parse';
 import { isTree, type Tree } from './tree';
 import { writeExpression } from './write';
@@ -83,6 +83,8 @@ describe('an expression', () => {
     expect(() => evaluateExpression('unknown', new Map())).toThrow(BrokenExpression);
     expect(() => value('part + 1')).toThrow(BrokenExpression);
     expect(() => value('sum(L, L)')).toThrow(BrokenExpression);
+    expect(() => evaluateTruth('L', scope)).toThrow('"L" is not a condition');
+    expect(() => evaluateExpression(['eval', 1] as never, scope)).toThrow('No operation eval');
   });
 
   test.each([
@@ -91,6 +93,9 @@ describe('an expression', () => {
     '(L + a)*2',
     '(-L)^2',
     '-L^2',
+    'L*(-2)',
+    'part == "span"',
+    'part == "span" ? L : a',
     'sum(loads, P*x)',
     'not (a > 1 and L > 2)',
   ])('%s is written back so that it reads the same', (text) => {
@@ -127,6 +132,8 @@ describe('the dimension of an expression', () => {
     ['count(loads)', DIMENSIONS.ratio],
     ['(a/L)^(a/L)', DIMENSIONS.ratio],
     ['L^(1/2)*L^(3/2)', DIMENSIONS.area],
+    ['min(0, 0) + a', DIMENSIONS.length],
+    ['sqrt(0) + L', DIMENSIONS.length],
   ])('%s is sound', (text, dimension) => {
     expect(dimensionOf(treeOf(text), kinds)).toEqual({ ok: true, kind: ofDimension(dimension) });
   });
@@ -145,6 +152,9 @@ describe('the dimension of an expression', () => {
     ['L ? a : L', 'The part before “?” in (L ? a : L) is no condition.'],
     ['sum(L, a)', '“L” in sum is no list of rows.'],
     ['L/0', 'L/0 divides by zero.'],
+    ['0 and L > a', '0 and L > a takes conditions, and one part is zero.'],
+    ['"spam" == part', '“spam” is no value here. Use overhang, span.'],
+    ['sin(part)', 'sin(part) calculates with a choice. Use numbers.'],
     ['loads + 1', 'loads + 1 calculates with a list of rows. Use numbers.'],
   ])('%s is refused in words', (text, message) => {
     expect(dimensionOf(treeOf(text), kinds)).toEqual({ ok: false, message });

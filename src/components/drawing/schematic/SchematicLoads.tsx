@@ -55,8 +55,8 @@ function Combs({ loads, toX, base, scale, names }: Props) {
     const most = isEven ? tallest : 18 * scale;
     const tall = (w: number) => (isEven ? most : w === 0 ? 0 : Math.max(3, (Math.abs(w) / row.most) * most));
     const foot = y;
-    y -= most + 4;
     const named = namedIn(row, names);
+    y -= most + (names?.some(Boolean) ? 13 : 4);
     return row.loads.flatMap(({ load, index }) =>
       oneWayParts(load).map(({ from, to, w0, w1 }, part) => {
         const upward = w0 + w1 < 0;

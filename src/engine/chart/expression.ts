@@ -198,3 +198,15 @@ const powersKey = (powers: Powers): string =>
         .map(([name, p]) => `${name}^${p}`)
         .sort()
         .join('*');
+
+/** Multiplied out; null where a sum stands in a denominator. */
+export const expandable = (a: Expression): Expression | null => (isWhole(a) ? expand(a) : null);
+
+/** Of an expression that is multiplied out, what stands beside the named symbol to the power p, `times` over. */
+export const powerOf = (a: Expression, name: string, p: number, times = 1): Expression =>
+  a
+    .filter(({ powers }) => (powers.get(name) ?? 0) === p)
+    .map((term) => {
+      const powers = new Map([...term.powers].filter(([letter]) => letter !== name));
+      return termOf(product(term.coefficient, rational(times)), powers, term.factors);
+    });

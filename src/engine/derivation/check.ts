@@ -1,10 +1,11 @@
-import { multiply, subtract, symbol } from '../chart/index';
+import { multiply, simplest, subtract, symbol } from '../chart/index';
 import type { Redundant } from '../model/index';
 import { solveStiffness } from '../stiffness/index';
-import { gapKind, movementsOf } from './redundants';
+import { expressionOf } from './movement';
+import { gapKind, movementsOf } from './movements';
 import { calculate } from './step';
 import type { DerivationStep } from './types';
-import { flexibilityTex, gapTex, type Unknown } from './unknown';
+import { acts, flexibilityTex, gapTex, type Unknown } from './unknown';
 import { type Worked, work } from './values';
 import { placeOf, sentence } from './words';
 
@@ -22,17 +23,20 @@ export function checkStep(worked: Worked): DerivationStep[] {
   return [found ?? byStiffness(worked)];
 }
 
+/** A check with more terms than this convinces nobody. */
+const MOST_TERMS = 5;
+
 /** θ_A = θ_A0 − M_A f_AA, with the charts' terms; null where they do not cover it. */
 function byOther(worked: Worked, other: Redundant): DerivationStep | null {
   const { beam } = worked;
   const second = work(beam, [other]);
-  const [unknown] = second.unknowns as [Unknown];
+  const unknown = second.unknowns[0]!;
+  if (unknown.kind === 'internal' || !beam.letters.has(unknown.tex) || isSprung(unknown)) return null;
   const movements = movementsOf(second);
-  const [gap, flexibility] = [movements.gaps[0], movements.flexibility(0, 0)];
+  const [gap, flexibility] = [expressionOf(movements.gap(0)), expressionOf(movements.flexibility(0, 0))];
   if (!gap || !flexibility) return null;
-  const value = unknown.kind === 'internal' ? null : beam.letters.value(unknown.tex);
-  if (value === null) return null;
-  const expression = subtract(gap.value, multiply(symbol(unknown.tex), flexibility.value));
+  const expression = subtract(simplest(gap), multiply(symbol(unknown.tex), simplest(flexibility)));
+  if (expression.length > MOST_TERMS) return null;
   const letter = gapTex(unknown).replace('0}', '}');
   const left = `${letter}=${gapTex(unknown)}-${unknown.tex}${flexibilityTex(unknown, unknown)}`;
   return calculate(beam.letters, {
@@ -40,11 +44,16 @@ function byOther(worked: Worked, other: Redundant): DerivationStep | null {
     title: `Check: ${unknown.kind === 'reaction' ? 'deflection' : 'slope'} ${placeOf(unknown)} from the other redundant`,
     left,
     expression,
+    value: second.imposed[0]!,
     kind: gapKind(unknown),
-    scale: 'metre',
+    scale: 'base',
     extra: { note: expected(second, unknown) },
   });
 }
+
+/** A spring's own end moves: nothing is known of it beforehand. */
+const isSprung = ({ kind, support }: Unknown): boolean =>
+  support?.support[kind === 'reaction' ? 'vertical' : 'rotation'].kind === 'spring';
 
 function expected({ imposed }: Worked, unknown: Unknown): string {
   const word = unknown.kind === 'reaction' ? 'move' : 'turn';
@@ -56,7 +65,7 @@ function expected({ imposed }: Worked, unknown: Unknown): string {
 /** The difference from the independent solution, which shares nothing with the force method. */
 function byStiffness(worked: Worked): DerivationStep {
   const { beam, unknowns } = worked;
-  const [unknown] = unknowns as [Unknown];
+  const unknown = unknowns[0]!;
   const { reactions, pieces } = solveStiffness(beam.beam);
   const value =
     unknown.redundant.component === 'moment'
@@ -64,15 +73,14 @@ function byStiffness(worked: Worked): DerivationStep {
       : unknown.kind === 'reaction'
         ? reactions[unknown.redundant.support]!.vertical
         : reactions[unknown.redundant.support]!.moment * unknown.sense;
-  const kind = unknown.kind === 'reaction' ? 'force' : 'moment';
+  const kind = acts(unknown);
   const tex = `${unknown.tex}^{\\mathrm{st}}`;
   return calculate(beam.letters, {
     id: 'check',
-    title: `Check: the stiffness method gives the same ${unknown.kind === 'reaction' ? 'reaction' : 'moment'} ${placeOf(unknown)}`,
-    left: `${unknown.tex}-${tex}`,
-    symbols: '0',
-    expression: subtract(symbol(unknown.tex), beam.letters.define(tex, value, kind)),
+    title: `Check: the stiffness method, which shares nothing with this working, gives the same ${unknown.kind === 'reaction' ? 'reaction' : 'moment'} ${placeOf(unknown)}`,
+    left: '',
+    expression: subtract(beam.letters.define(tex, value, kind), symbol(unknown.tex)),
     kind,
-    scale: 'metre',
+    scale: 'base',
   });
 }

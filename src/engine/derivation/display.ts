@@ -1,5 +1,6 @@
 import { formatNumber } from '../quantity/index';
-import { inUnit, numberTex, toTex } from './symbols';
+import { numberTex, toTex } from './symbols';
+import { inUnit, unitTex } from './units';
 
 /** Figures of a result, and of the numbers it is shown to come from unless they need more. */
 export const FIGURES = 4;
@@ -18,7 +19,7 @@ export function display(si: number, unit: string, largest = Math.abs(si)): strin
 export function withUnit(si: number, unit: string, largest = Math.abs(si), like = ''): string {
   const figures = Math.max(FIGURES, like.replace(/[.,].*/, '').replaceAll(/\D/g, '').length);
   const text = shown(inUnit(si, unit), Math.abs(inUnit(largest, unit)), figures);
-  return `${toTex(text)}\\,\\mathrm{${unitTex(unit)}}`;
+  return `${toTex(text)}\\,${unitTex(unit)}`;
 }
 
 /** Below the noise of arithmetic: 11.025 found in two ways must round one way. */
@@ -33,6 +34,9 @@ function shown(found: number, reference: number, figures: number): string {
 
 /** A value as it was given, with its unit, for maths mode. */
 export const given = (si: number, unit: string): string =>
-  `${numberTex(inUnit(si, unit))}\\,\\mathrm{${unitTex(unit)}}`;
+  `${numberTex(inUnit(si, unit))}\\,${unitTex(unit)}`;
 
-const unitTex = (unit: string): string => unit.replace(/2$/, '^2');
+/** A place along the beam, in words. */
+export function placeWords(x: number, unit: string): string {
+  return `${formatNumber(Number(inUnit(x, unit).toFixed(3)))} ${unit} from the left end`;
+}

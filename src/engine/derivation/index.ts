@@ -1,2 +1,2 @@
 export { derive } from './derive';
-export type { DerivationStep, DisplayUnit } from './types';
+export { type DerivationStep, type DisplayUnit, SI_UNITS } from './types';

@@ -1,52 +1,52 @@
 import {
-  add,
-  type ChartTerm,
-  chartTerms,
   constant,
   cut,
+  divide,
   type Expression,
-  movementTerms,
   type NamedLoad,
   negate,
   type Released,
+  type SupportForces,
   type SupportMovements,
-  symbol,
-  total,
   ZERO,
 } from '../chart/index';
-import { movementOf, type NamedBeam, type NamedSupport, settlement, turning } from './named-beam';
+import {
+  type NamedBeam,
+  type NamedSupport,
+  settlementOf,
+  springOf,
+  turningOf,
+  turningSpringOf,
+} from './named-beam';
 import type { Unknown } from './unknown';
 
 /**
- * A part of the released beam that stands by itself: between two cuts, each over a support that does not yield, and of a
+ * A part of the released beam that stands by itself: between two cuts, each over a support that does not give, and of a
  * kind the charts know.
  */
 export type Piece = {
   from: number;
   to: number;
   released: Released;
-  movements: SupportMovements;
+  /** What holds it up, from the left, and what keeps it from turning. */
+  vertical: readonly NamedSupport[];
+  turning: NamedSupport | null;
   ei: Expression;
-  /** Of the given loads, those that act on this piece. */
-  loads: NamedLoad[];
+  /** Null where shear adds nothing. */
+  ga: Expression | null;
 };
 
-/** A sum of chart terms. */
-export type Charted = { value: Expression; terms: ChartTerm[] };
-
 /**
- * The released beam as pieces that the charts know; null where it is none: a cut in mid-span, a spring, two supports
- * that turn together, a change of EI, or shear that counts.
+ * The released beam as pieces that the charts know; null where it is none: a cut in mid-span or over a spring, or a
+ * change of EI.
  */
 export function piecesOf(beam: NamedBeam, unknowns: readonly Unknown[]): Piece[] | null {
-  const cuts = [...new Set([...beam.beam.hinges, ...internalCuts(unknowns)])].sort((a, b) => a - b);
+  const internal = unknowns.flatMap(({ kind, x }) => (kind === 'internal' ? [x] : []));
+  const cuts = [...new Set([...beam.beam.hinges, ...internal])].sort((a, b) => a - b);
   const ends = [0, ...cuts, beam.beam.length];
   const pieces = ends.slice(1).map((to, k) => pieceBetween(beam, unknowns, ends[k]!, to));
   return pieces.every((piece) => piece !== null) ? pieces : null;
 }
-
-const internalCuts = (unknowns: readonly Unknown[]) =>
-  unknowns.flatMap(({ kind, x }) => (kind === 'internal' ? [x] : []));
 
 function pieceBetween(beam: NamedBeam, unknowns: readonly Unknown[], from: number, to: number): Piece | null {
   const isReleased = ({ index }: NamedSupport, component: 'vertical' | 'rotation') =>
@@ -55,45 +55,45 @@ function pieceBetween(beam: NamedBeam, unknowns: readonly Unknown[], from: numbe
   const holding = (component: 'vertical' | 'rotation') =>
     inside.filter((s) => s.support[component].kind !== 'free' && !isReleased(s, component));
   const [vertical, rotation] = [holding('vertical'), holding('rotation')];
-  const rigid = [...vertical.map((s) => s.support.vertical), ...rotation.map((s) => s.support.rotation)];
-  if (rigid.some(({ kind }) => kind !== 'rigid')) return null;
+  const isStill = (x: number) => vertical.some((s) => s.x === x && s.support.vertical.kind === 'rigid');
   const isCut = (x: number) => x > 0 && x < beam.beam.length;
-  if ([from, to].some((x) => isCut(x) && !vertical.some((s) => s.x === x))) return null;
+  if ([from, to].some((x) => isCut(x) && !isStill(x))) return null;
   const released = releasedKind(vertical, rotation);
-  const ei = stiffnessBetween(beam, from, to);
-  if (!released || !ei) return null;
-  const rise = (s: NamedSupport | undefined) =>
-    s && movementOf(s.support.vertical) !== 0 ? negate(symbol(settlement(s.letter))) : ZERO;
-  const root = rotation[0];
-  const turn = root && movementOf(root.support.rotation) !== 0 ? symbol(turning(root.letter)) : ZERO;
-  const loads = beam.chartLoads.flatMap(({ load }) => partOn(beam, load, from, to) ?? []);
-  return {
-    from,
-    to,
-    released,
-    movements: { rises: [rise(vertical[0]), rise(vertical[1])], rotation: turn },
-    ei,
-    loads,
-  };
+  const stiffness = stiffnessBetween(beam, from, to);
+  return (
+    released && stiffness && { from, to, released, vertical, turning: rotation[0] ?? null, ...stiffness }
+  );
 }
 
 function releasedKind(vertical: readonly NamedSupport[], rotation: readonly NamedSupport[]): Released | null {
   const [first, second] = vertical;
-  if (vertical.length === 2 && rotation.length === 0)
-    return { kind: 'simple', left: first!.at, right: second!.at };
-  const isFixed = vertical.length === 1 && rotation.length === 1 && first === rotation[0];
-  return isFixed ? { kind: 'cantilever', root: first!.at } : null;
+  const [turning] = rotation;
+  if (!first) return null;
+  if (second)
+    return vertical.length === 2 && !turning ? { kind: 'simple', left: first.at, right: second.at } : null;
+  if (!turning || rotation.length > 1) return null;
+  if (first === turning) return { kind: 'cantilever', root: first.at };
+  return { kind: 'guided', guide: turning.at, prop: first.at };
 }
 
-function stiffnessBetween({ beam, stiffness }: NamedBeam, from: number, to: number): Expression | null {
+export function stiffnessBetween(
+  { beam, segments }: NamedBeam,
+  from: number,
+  to: number,
+): Pick<Piece, 'ei' | 'ga'> | null {
   const inside = beam.segments.flatMap((segment, k) =>
-    segment.to > from && segment.from < to ? [{ segment, k }] : [],
+    segment.to > from && segment.from < to ? [{ segment, named: segments[k]! }] : [],
   );
+  const [first] = inside;
   const isUniform = inside.every(
-    ({ segment }) => segment.ga === null && segment.ei === inside[0]!.segment.ei,
+    ({ segment }) => segment.ga === first?.segment.ga && segment.ei === first.segment.ei,
   );
-  return isUniform ? stiffness[inside[0]!.k]! : null;
+  return first && isUniform ? { ei: first.named.ei, ga: first.named.ga } : null;
 }
+
+/** What of the loads acts on a piece. */
+export const loadsOn = (beam: NamedBeam, { from, to }: Piece, loads: readonly NamedLoad[]): NamedLoad[] =>
+  loads.flatMap((load) => partOn(beam, load, from, to) ?? []);
 
 /** What of a load acts between two cuts: a load over a cut goes into its support, a couple there turns the right side. */
 export function partOn(beam: NamedBeam, load: NamedLoad, from: number, to: number): NamedLoad | null {
@@ -118,8 +118,8 @@ export function partOn(beam: NamedBeam, load: NamedLoad, from: number, to: numbe
     : { kind: 'curvature', from: within.from, to: within.to, kappa: within.w0 };
 }
 
-/** A unit value of a redundant in its sense, on the piece. */
-function unitOn(beam: NamedBeam, unknown: Unknown, piece: Piece): NamedLoad | null {
+/** A unit value of a redundant in its sense, on the piece; null where it does not act there. */
+export function unitOn(beam: NamedBeam, unknown: Unknown, piece: Piece): NamedLoad | null {
   const at = unknown.support?.at ?? beam.places.load(unknown.x);
   if (unknown.x < piece.from || unknown.x > piece.to) return null;
   switch (unknown.kind) {
@@ -133,62 +133,25 @@ function unitOn(beam: NamedBeam, unknown: Unknown, piece: Piece): NamedLoad | nu
   }
 }
 
-/**
- * The movement of the released beam at a redundant under the loads and the movements of its supports: against the sense
- * of a reaction, in the sense of an internal moment. Null where the charts do not cover it.
- */
-export function chartedGap(beam: NamedBeam, pieces: readonly Piece[], at: Unknown): Charted | null {
-  return movementAt(beam, pieces, at, (piece, place, movement) => {
-    const setting = beam.setting(piece.ei);
-    const found = piece.loads.map((load) => chartTerms(piece.released, load, place, movement, setting));
-    if (found.some((terms) => terms === null)) return null;
-    return [
-      ...found.flatMap((terms) => terms ?? []),
-      ...movementTerms(piece.released, piece.movements, place, movement, setting),
-    ];
-  });
+/** What the supports of a piece are made to do. */
+export function movementsOn({ vertical: [first, second], turning }: Piece): SupportMovements {
+  const rise = (support: NamedSupport | undefined) => {
+    const settlement = support && settlementOf(support);
+    return settlement ? negate(settlement) : ZERO;
+  };
+  return {
+    rises: [rise(first), rise(second)],
+    rotation: (turning && turningOf(turning)) ?? ZERO,
+  };
 }
 
-/** f_ij: the movement at one redundant, in its sense, for a unit value of another. */
-export function chartedFlexibility(
-  beam: NamedBeam,
-  pieces: readonly Piece[],
-  at: Unknown,
-  unit: Unknown,
-): Charted | null {
-  const found = movementAt(beam, pieces, at, (piece, place, movement) => {
-    const load = unitOn(beam, unit, piece);
-    return load ? chartTerms(piece.released, load, place, movement, beam.setting(piece.ei)) : [];
-  });
-  return found && at.kind !== 'internal' ? turnedRound(found) : found;
+/** What its springs let its supports do where they carry these forces: each gives by its force over its stiffness. */
+export function yieldingOn(
+  { vertical, turning }: Piece,
+  { forces, couple }: SupportForces,
+): SupportMovements {
+  const given = (force: Expression, stiffness: Expression | null) =>
+    stiffness ? negate(divide(force, stiffness)) : ZERO;
+  const rise = (k: 0 | 1) => given(forces[k], vertical[k] ? springOf(vertical[k]) : null);
+  return { rises: [rise(0), rise(1)], rotation: given(couple, turning && turningSpringOf(turning)) };
 }
-
-type TermsAt = (piece: Piece, place: Expression, movement: 'deflection' | 'slope') => ChartTerm[] | null;
-
-function movementAt(
-  beam: NamedBeam,
-  pieces: readonly Piece[],
-  at: Unknown,
-  termsAt: TermsAt,
-): Charted | null {
-  const place = at.support?.at ?? beam.places.load(at.x);
-  const beside = pieces.filter(({ from, to }) => from <= at.x && at.x <= to);
-  if (at.kind === 'internal') {
-    // Slopes are clockwise: the kink is the right side's less the left side's.
-    const [left, right] = beside.map((piece) => termsAt(piece, place, 'slope'));
-    return left && right ? sumOf([...left.map(opposite), ...right]) : null;
-  }
-  const terms = termsAt(beside[0]!, place, at.kind === 'reaction' ? 'deflection' : 'slope');
-  if (!terms) return null;
-  return sumOf(at.sense < 0 ? terms.map(opposite) : terms);
-}
-
-const opposite = (term: ChartTerm): ChartTerm => ({ ...term, value: negate(term.value) });
-const sumOf = (terms: ChartTerm[]): Charted => ({ value: total(terms), terms });
-const turnedRound = ({ terms }: Charted): Charted => sumOf(terms.map(opposite));
-
-/** The same with another sum added: a spring's 1/k. */
-export const withAdded = ({ value, terms }: Charted, more: Expression): Charted => ({
-  value: add(value, more),
-  terms,
-});

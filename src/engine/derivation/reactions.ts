@@ -1,6 +1,8 @@
-import { add, type Expression, negate, texOf, ZERO } from '../chart/index';
+import { add, type Expression, negate, ZERO } from '../chart/index';
 import { evaluate } from '../polynomial/index';
+import { placeWords } from './display';
 import type { NamedBeam, NamedSupport } from './named-beam';
+import { placeTex } from './peak';
 import { type Equilibrium, equilibrium, momentAt } from './statics';
 import { calculate } from './step';
 import type { DerivationStep } from './types';
@@ -20,7 +22,7 @@ export function reactionSteps(worked: Worked): DerivationStep[] {
       left: equation.tex,
       expression: equation.value,
       kind,
-      scale: 'metre',
+      scale: 'base',
       ...(isNegative(beam, equation.value) &&
         equation.support && { extra: { note: noteOf(equation, kind) } }),
     });
@@ -31,8 +33,7 @@ export function reactionSteps(worked: Worked): DerivationStep[] {
 
 /** Below zero, and not what rounding leaves of a difference. */
 function isNegative({ letters }: NamedBeam, value: Expression): boolean {
-  const largest = Math.max(0, ...value.map((term) => Math.abs(letters.of([term]))));
-  return letters.of(value) < -1e-9 * largest;
+  return letters.of(value) < -1e-9 * letters.largest(value);
 }
 
 function noteOf({ support }: Equilibrium, kind: 'force' | 'moment'): string {
@@ -61,7 +62,7 @@ function nameLength(beam: NamedBeam, { from, to }: { from: number; to: number })
   return `the part from ${name(from)} to ${name(to)}`;
 }
 
-/** The moments over the supports that are no unknowns of the derivation already; defines nothing. */
+/** The moments over the supports that are not found already; defines their letters. */
 export function supportMomentSteps(worked: Worked): DerivationStep[] {
   const { beam, unknowns, parts, solution } = worked;
   const largest = Math.max(
@@ -75,32 +76,34 @@ export function supportMomentSteps(worked: Worked): DerivationStep[] {
     const [left, right] = evaluate(solution.diagrams.moment, x);
     const isNothing = Math.max(Math.abs(left), Math.abs(right)) <= 1e-9 * largest;
     if (isEnd || isFound || isNothing || beam.beam.hinges.includes(x)) return [];
+    if (beam.letters.has(supportMomentTex(support))) return [];
     if (jumpsAt(beam, support)) {
       return (['left', 'right'] as const).map((side) =>
         moment(
           beam,
           `${letter}-${side}`,
           `Moment just ${side} of ${letter}`,
-          `M_{${letter},\\mathrm{${side}}}`,
+          supportMomentTex(support, side),
           momentAt(beam, parts, support, side),
         ),
       );
     }
-    return [moment(beam, letter, `Moment over ${letter}`, `M_{${letter}}`, momentAt(beam, parts, support))];
+    return [supportMoment(beam, support, momentAt(beam, parts, support))];
   });
 }
 
 /** The moments on both sides of each couple that stands clear of the supports, and at an end that one is put on. */
 export function coupleMomentSteps({ beam, parts }: Worked): DerivationStep[] {
   const places = new Map<number, { at: Expression; m: Expression }>();
-  for (const { load, numeric } of beam.loads) {
-    if (load.kind !== 'couple' || numeric.kind !== 'couple') continue;
+  for (const { numeric, fine } of beam.groups) {
+    const [load] = fine;
+    if (load?.kind !== 'couple' || numeric.kind !== 'couple') continue;
     const { at, m } = places.get(numeric.at) ?? { at: load.at, m: ZERO };
     places.set(numeric.at, { at, m: add(m, load.m) });
   }
   return [...places].flatMap(([x, { at, m }]) => {
     const support = beam.supports.find((each) => each.x === x);
-    const where = support?.letter ?? nameOf(beam, at);
+    const where = support?.letter ?? placeTex(beam, at);
     const id = `couple-${x.toFixed(3)}`;
     if (x === 0 || x === beam.beam.length) {
       if (support && support.support.rotation.kind !== 'free') return [];
@@ -113,7 +116,7 @@ export function coupleMomentSteps({ beam, parts }: Worked): DerivationStep[] {
       moment(
         beam,
         `${id}-${side}`,
-        `Moment just ${side} of the couple at ${Number(x.toFixed(3))} m`,
+        `Moment just ${side} of the couple, ${placeWords(x, beam.letters.units.of('length', 'base'))}`,
         `M_{${where},\\mathrm{${side}}}`,
         momentAt(beam, parts, { x, at }, side),
       ),
@@ -123,7 +126,18 @@ export function coupleMomentSteps({ beam, parts }: Worked): DerivationStep[] {
 
 const jumpsAt = (beam: NamedBeam, { x, support }: NamedSupport): boolean =>
   support.rotation.kind !== 'free' ||
-  beam.loads.some(({ numeric }) => numeric.kind === 'couple' && numeric.at === x);
+  beam.groups.some(({ numeric }) => numeric.kind === 'couple' && numeric.at === x);
+
+/** M_B, or M_B just left or right of a support where it jumps. */
+export const supportMomentTex = ({ letter }: NamedSupport, side?: 'left' | 'right'): string =>
+  side ? `M_{${letter},\\mathrm{${side}}}` : `M_{${letter}}`;
+
+export const supportMoment = (
+  beam: NamedBeam,
+  support: NamedSupport,
+  expression: Expression,
+): DerivationStep =>
+  moment(beam, support.letter, `Moment over ${support.letter}`, supportMomentTex(support), expression);
 
 function moment(
   beam: NamedBeam,
@@ -132,39 +146,14 @@ function moment(
   left: string,
   expression: Expression,
 ): DerivationStep {
-  return calculate(beam.letters, {
+  const step = calculate(beam.letters, {
     id: `moment-${id}`,
     title,
     left,
     expression,
     kind: 'moment',
-    scale: 'metre',
+    scale: 'base',
   });
-}
-
-/** A place as it stands within brackets or below the line. */
-const nameOf = (beam: NamedBeam, place: Expression): string =>
-  texOf(place, beam.letters.symbols()).replaceAll('\\dfrac', '\\tfrac');
-
-/** The largest sagging moment, where it is within a span: where the shear is zero. */
-export function peakStep(worked: Worked): DerivationStep[] {
-  const { beam, solution } = worked;
-  const { value, at } = solution.extremes.moment.max;
-  const x = at[0]!;
-  const isPlain = !beam.beam.hinges.includes(x) && !beam.supports.some((s) => s.x === x);
-  if (value <= 0 || x === 0 || x === beam.beam.length || !isPlain) return [];
-  if (beam.loads.some(({ numeric }) => numeric.kind === 'couple' && numeric.at === x)) return [];
-  const place = beam.places.find(x) ?? beam.places.give(x, beam.letters.define('x_m', x, 'length'));
-  const where = nameOf(beam, place);
-  return [
-    calculate(beam.letters, {
-      id: 'largest-moment',
-      title: `Largest sagging moment, ${Number(x.toFixed(3))} m from the left end`,
-      left: `M(${where})`,
-      expression: momentAt(beam, worked.parts, { x, at: place }),
-      value,
-      kind: 'moment',
-      scale: 'metre',
-    }),
-  ];
+  beam.letters.define(left, beam.letters.of(expression), 'moment');
+  return step;
 }

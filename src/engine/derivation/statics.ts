@@ -118,7 +118,7 @@ export function partsOf(beam: NamedBeam, unknowns: readonly Unknown[]): Part[] {
       from,
       to,
       actions: [...shear(left, 1), ...held.flatMap((s) => reactionsOf(beam, s)), ...shear(right, -1)],
-      loads: beam.loads.flatMap(({ load }) => leftOfCut(beam, load, from, to) ?? []),
+      loads: beam.groups.flatMap(({ fine }) => fine).flatMap((load) => leftOfCut(beam, load, from, to) ?? []),
       moments: [left?.moment ?? ZERO, right?.moment ?? ZERO],
     };
   });

@@ -1,18 +1,19 @@
-import { type ChartTerm, type Expression, evaluate, oriented, texOf } from '../chart/index';
+import { type ChartCase, type Expression, evaluate, oriented, texOf } from '../chart/index';
 import { display, FIGURES, withUnit } from './display';
-import { inUnit, type Kind, type Letters, numberTex, type Scale, toSi, unitOf } from './symbols';
-import type { ChartUse, DerivationStep, DisplayUnit } from './types';
+import type { Letters } from './symbols';
+import type { ChartUse, DerivationStep } from './types';
+import { type Kind, type Scale, toSi } from './units';
 
 const MOST_FIGURES = 10;
 
 /** What every calculated step has. */
-type Frame = {
+export type Frame = {
   id: string;
   title: string;
-  /** What stands left of the equals sign. */
+  /** What stands left of the equals sign; "" where the symbols say it all. */
   left: string;
   kind: Kind;
-  /** Closed forms give movements in m; results are handed on in mm. */
+  /** Closed forms give movements in m or ft; results are handed on in mm or in. */
   scale: Scale;
   extra?: Pick<DerivationStep, 'key' | 'note' | 'charts' | 'figure'>;
 };
@@ -26,105 +27,89 @@ export type Calculation = Frame & {
   value?: number;
 };
 
-/** A step whose arithmetic is a plain sum of parts, such as integrals over the pieces of the beam. */
-export type Summation = Frame & { symbols: string; parts: readonly number[]; value: number };
-
 export function calculate(letters: Letters, calculation: Calculation): DerivationStep {
-  const { symbols, scale, kind } = calculation;
+  const { symbols, value } = calculation;
   const expression = oriented(calculation.expression, letters.value);
-  const sizes = expression.map((term) => Math.abs(letters.of([term])));
-  return finish(calculation, {
-    symbols: symbols ?? texOf(expression, letters.symbols()),
-    value: calculation.value ?? letters.of(expression),
-    largest: Math.max(0, ...sizes),
-    total: (figures) =>
-      toSi(
-        evaluate(expression, (tex) => letters.shown(tex, scale, figures)),
-        unitOf(kind, scale),
-      ),
-    tex: (figures) => texOf(expression, letters.numbers(scale, figures)),
-  });
-}
-
-export function sumUp(summation: Summation): DerivationStep {
-  const { symbols, parts, value, kind, scale } = summation;
-  const unit = unitOf(kind, scale);
-  const terms = (figures: number) =>
-    parts.map((part) => Number(inUnit(part, unit).toPrecision(figures))).filter((part) => part !== 0);
-  return finish(summation, {
-    symbols,
-    value,
-    largest: Math.max(0, ...parts.map(Math.abs)),
-    total: (figures) =>
-      toSi(
-        terms(figures).reduce((sum, part) => sum + part, 0),
-        unit,
-      ),
-    tex: (figures) =>
-      terms(figures)
-        .map((part, k) => (part < 0 || k === 0 ? numberTex(part) : `+${numberTex(part)}`))
-        .join('') || '0',
-  });
-}
-
-type Arithmetic = {
-  symbols: string;
-  value: number;
-  /** Of its terms. */
-  largest: number;
-  /** What the numbers come to, SI, and how they are written, at so many figures. */
-  total: (figures: number) => number;
-  tex: (figures: number) => string;
-};
-
-/**
- * The step with its TeX. Its numbers get as many figures as it takes until they come to the displayed result: what is
- * printed can be recalculated. Where no reasonable number of figures does that, the result alone is written.
- */
-function finish(
-  { id, title, left, kind, scale, extra }: Frame,
-  { symbols, value, largest, total, tex }: Arithmetic,
-): DerivationStep {
-  const unit = displayUnit(kind);
-  const inScale = unitOf(kind, scale);
-  const shown = display(value, unit, largest);
-  const result = withUnit(value, inScale, largest, shown);
-  const figures = fewest((count) => display(total(count), unit, largest) === shown);
-  const numbers = figures === null ? result : tex(figures);
+  const { unit, shown, numbers, result } = arithmetic(letters, calculation, expression, value);
+  const { id, title, left, extra } = calculation;
+  const right = symbols ?? texOf(expression, letters.symbols());
   return {
     id,
     title,
-    symbols: `${left}=${symbols}`,
-    numbers: figures === null || inScale === unit ? numbers : `${numbers}=${result}`,
-    value,
+    symbols: left === '' ? right : `${left}=${right}`,
+    numbers: withResult(letters, calculation, numbers, result),
+    value: value ?? letters.of(expression),
     unit,
     display: shown,
     ...extra,
   };
 }
 
+/** An expression's numbers, and what they come to. */
+export function arithmetic(
+  letters: Letters,
+  { kind, scale }: Pick<Frame, 'kind' | 'scale'>,
+  expression: Expression,
+  value = letters.of(expression),
+) {
+  return written(
+    letters,
+    { kind, scale },
+    {
+      value,
+      largest: letters.largest(expression),
+      total: (figures) => evaluate(expression, (tex) => letters.shown(tex, scale, figures)),
+      tex: (figures) => (expression.length === 0 ? '' : texOf(expression, letters.numbers(scale, figures))),
+    },
+  );
+}
+
+/** Numbers at a precision still to be chosen. */
+export type Written = {
+  /** SI, and of the largest of its terms. */
+  value: number;
+  largest: number;
+  /** What the numbers come to in the unit of the scale, and how they are written, at so many figures. */
+  total: (figures: number) => number;
+  tex: (figures: number) => string;
+};
+
+/**
+ * The numbers get as many figures as it takes until they come to the displayed result: what is printed can be
+ * recalculated. Where no reasonable number of figures does that, the result alone is written.
+ */
+export function written(
+  { units }: Letters,
+  { kind, scale }: Pick<Frame, 'kind' | 'scale'>,
+  { value, largest, total, tex }: Written,
+) {
+  const unit = units.shown(kind);
+  const inScale = units.of(kind, scale);
+  const shown = display(value, unit, largest);
+  const result = withUnit(value, inScale, largest, shown);
+  const figures = fewest((count) => display(toSi(total(count), inScale), unit, largest) === shown);
+  return { unit, shown, result, numbers: figures === null ? result : tex(figures) };
+}
+
+/** Numbers whose result is displayed in another unit end in it. */
+export function withResult(
+  { units }: Letters,
+  { kind, scale }: Pick<Frame, 'kind' | 'scale'>,
+  numbers: string,
+  result: string,
+): string {
+  const isDone = numbers === '' || numbers === result || units.of(kind, scale) === units.shown(kind);
+  return isDone ? numbers : `${numbers}=${result}`;
+}
+
 /** The least number of figures that will do; null if none does. */
-function fewest(isEnough: (figures: number) => boolean): number | null {
+export function fewest(isEnough: (figures: number) => boolean): number | null {
   for (let figures = FIGURES; figures <= MOST_FIGURES; figures++) if (isEnough(figures)) return figures;
   return null;
 }
 
-const DISPLAYED: Partial<Record<Kind, DisplayUnit>> = {
-  force: 'kN',
-  moment: 'kNm',
-  length: 'm',
-  deflection: 'mm',
-  rotation: 'mrad',
-  'deflection per force': 'mm/kN',
-  'deflection per moment': 'mm/kNm',
-  'rotation per force': 'mrad/kN',
-  'rotation per moment': 'mrad/kNm',
-};
-
-const displayUnit = (kind: Kind): DisplayUnit => DISPLAYED[kind] ?? '';
-
 /** The charts that terms come from, each once. */
-export function chartsOf(terms: readonly ChartTerm[]): ChartUse[] {
+export function chartsOf(terms: readonly { chart: ChartCase }[]): ChartUse[] {
   const used = new Map(terms.map(({ chart }) => [chart.id, chart]));
   return [...used.values()].map(({ id, title, source: { work, edition, table, entry, fromMemory } }) => ({
     id,

@@ -1,69 +1,38 @@
 import { type Expression, evaluate, symbol, type Writer } from '../chart/index';
-import { formatNumber, fromUnit } from '../quantity/index';
+import { formatNumber } from '../quantity/index';
+import { inUnit, type Kind, rankOf, type Scale, type Units } from './units';
 
-/** Kinds of symbol, with the unit each is written in where movements are in m and rad, and where in mm and mrad. */
-const UNITS = {
-  line: ['kN/m', 'kN/m'],
-  force: ['kN', 'kN'],
-  moment: ['kNm', 'kNm'],
-  curvature: ['1/m', '1/m'],
-  length: ['m', 'm'],
-  deflection: ['m', 'mm'],
-  rotation: ['rad', 'mrad'],
-  'deflection per force': ['m/kN', 'mm/kN'],
-  'deflection per moment': ['m/kNm', 'mm/kNm'],
-  'rotation per force': ['rad/kN', 'mrad/kN'],
-  'rotation per moment': ['rad/kNm', 'mrad/kNm'],
-  'force per deflection': ['kN/m', 'kN/mm'],
-  'force per rotation': ['kN/rad', 'kN/mrad'],
-  'moment per deflection': ['kNm/m', 'kNm/mm'],
-  'moment per rotation': ['kNm/rad', 'kNm/mrad'],
-  spring: ['kN/m', 'kN/m'],
-  'rotational spring': ['kNm/rad', 'kNm/rad'],
-  shear: ['kN', 'kN'],
-  bending: ['kNm2', 'kNm2'],
-  number: ['', ''],
-} as const;
+/** Given: to be explained first. Drawn: a parameter or a length that the drawing explains. Found: a result. */
+type Role = 'given' | 'drawn' | 'found';
 
-export type Kind = keyof typeof UNITS;
-const KINDS = Object.keys(UNITS);
-/** Movements in m and rad, as the closed forms give them; or in mm and mrad, as results are handed on. */
-export type Scale = 'metre' | 'milli';
+/** A letter of the derivation: its TeX is its name; the value is SI. */
+export type Letter = { tex: string; value: number; kind: Kind; role: Role };
 
-export const unitOf = (kind: Kind, scale: Scale): string => UNITS[kind][scale === 'metre' ? 0 : 1];
+/** A given number of no more figures than this is written in full. */
+const AS_GIVEN = 6;
+/** Else to so many at least. */
+const ROUNDED = 5;
+/** What a change of units leaves of an exact number. */
+const NOISE = 1e-11;
 
-/** SI value of 1 of each unit: read once, not at every number. */
-const FACTORS: ReadonlyMap<string, number> = new Map(
-  Object.values(UNITS)
-    .flat()
-    .map((unit) => [unit, fromUnit(1, unit)]),
-);
-
-/** An SI value in one of the derivation's units. */
-export const inUnit = (si: number, unit: string): number => si / (FACTORS.get(unit) ?? Number.NaN);
-
-/** SI of a value in one of the derivation's units. */
-export const toSi = (value: number, unit: string): number => value * (FACTORS.get(unit) ?? Number.NaN);
-
-/** A letter of the derivation: its TeX is its name. `given`: to be explained; not a result, and not on the drawing. */
-export type Letter = { tex: string; value: number; kind: Kind; given: boolean };
-
-/** Every letter with its SI value. In a product they stand in the order of UNITS: loads, lengths, stiffness. */
+/** Every letter with its SI value. In a product they stand in the order of their kinds: loads, lengths, stiffness. */
 export class Letters {
   private readonly found = new Map<string, Letter>();
 
+  constructor(readonly units: Units) {}
+
   /** The letter as an expression; null where the same letter already stands for another value. */
-  add(tex: string, value: number, kind: Kind, given = false): Expression | null {
+  add(tex: string, value: number, kind: Kind, role: Role = 'drawn'): Expression | null {
     const known = this.found.get(tex);
     if (known && (known.kind !== kind || Math.abs(known.value - value) > 1e-12 * Math.abs(value)))
       return null;
-    if (!known) this.found.set(tex, { tex, value, kind, given });
+    if (!known) this.found.set(tex, { tex, value, kind, role });
     return symbol(tex);
   }
 
   /** A letter that nothing else may carry. */
-  define(tex: string, value: number, kind: Kind, given = false): Expression {
-    const added = this.add(tex, value, kind, given);
+  define(tex: string, value: number, kind: Kind, role: Role = 'found'): Expression {
+    const added = this.add(tex, value, kind, role);
     if (!added) throw new RangeError(`the letter ${tex} stands for two things`);
     return added;
   }
@@ -72,14 +41,23 @@ export class Letters {
   number(letter: string, value: number, kind: Kind): Expression {
     for (let k = 1; ; k++) {
       const tex = k < 10 ? `${letter}_${k}` : `${letter}_{${k}}`;
-      if (!this.found.has(tex)) return this.define(tex, value, kind, true);
+      if (!this.found.has(tex)) return this.define(tex, value, kind, 'given');
     }
+  }
+
+  has(tex: string): boolean {
+    return this.found.has(tex);
   }
 
   readonly value = (tex: string): number => this.letter(tex).value;
 
   of(expression: Expression): number {
     return evaluate(expression, this.value);
+  }
+
+  /** The size of the largest of a sum's terms. */
+  largest(expression: Expression): number {
+    return expression.reduce((largest, term) => Math.max(largest, Math.abs(this.of([term]))), 0);
   }
 
   letter(tex: string): Letter {
@@ -89,10 +67,10 @@ export class Letters {
   }
 
   givens(): Letter[] {
-    return [...this.found.values()].filter(({ given }) => given);
+    return [...this.found.values()].filter(({ role }) => role === 'given');
   }
 
-  readonly rank = (tex: string): number => KINDS.indexOf(this.letter(tex).kind);
+  readonly rank = (tex: string): number => rankOf(this.letter(tex).kind);
 
   symbols(): Writer {
     return { atom: (tex) => ({ tex }), times: '', rank: this.rank };
@@ -107,10 +85,14 @@ export class Letters {
     return { atom, times: '\\times', rank: this.rank };
   }
 
-  /** The value that `numbers` writes. */
+  /** The value that `numbers` writes: what was given as it was given, what was found to so many figures. */
   shown(tex: string, scale: Scale, figures: number): number {
-    const { value, kind } = this.letter(tex);
-    return Number(inUnit(value, unitOf(kind, scale)).toPrecision(figures));
+    const { value, kind, role } = this.letter(tex);
+    const own = inUnit(value, this.units.of(kind, scale));
+    if (role === 'found') return Number(own.toPrecision(figures));
+    const written = Number(own.toPrecision(AS_GIVEN));
+    const isExact = Math.abs(written - own) <= NOISE * Math.abs(own);
+    return isExact ? written : Number(own.toPrecision(Math.max(ROUNDED, figures)));
   }
 }
 

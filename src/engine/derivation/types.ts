@@ -1,17 +1,32 @@
 import type { Beam, Redundant } from '../model/index';
+import type { UnitSystemName } from '../quantity/index';
+
+/** Units of results in kN, m and mm, and in kip, ft and in, each with the SI unit of the value. */
+export const SI_UNITS = {
+  '': '',
+  m: 'm',
+  mm: 'm',
+  mrad: 'rad',
+  kN: 'N',
+  kNm: 'N·m',
+  kNm2: 'N·m²',
+  'mm/kN': 'm/N',
+  'mm/kNm': 'm/(N·m)',
+  'mrad/kN': 'rad/N',
+  'mrad/kNm': 'rad/(N·m)',
+  ft: 'm',
+  in: 'm',
+  kip: 'N',
+  'kip-ft': 'N·m',
+  'kip-ft2': 'N·m²',
+  'in/kip': 'm/N',
+  'in/kip-ft': 'm/(N·m)',
+  'mrad/kip': 'rad/N',
+  'mrad/kip-ft': 'rad/(N·m)',
+} as const;
 
 /** The unit in which a result is shown; "" where it is a plain number or there is no single one. */
-export type DisplayUnit =
-  | ''
-  | 'm'
-  | 'mm'
-  | 'mrad'
-  | 'kN'
-  | 'kNm'
-  | 'mm/kN'
-  | 'mm/kNm'
-  | 'mrad/kN'
-  | 'mrad/kNm';
+export type DisplayUnit = keyof typeof SI_UNITS;
 
 /** What to draw beside a step: the released beam under the loads, under a unit value of one redundant, or the beam. */
 type Figure = { structure: 'released' } | { structure: 'unit'; redundant: number } | { structure: 'built' };
@@ -21,7 +36,8 @@ export type ChartUse = { id: string; title: string; source: string };
 
 /**
  * One line of the worked derivation. `symbols` and `numbers` are TeX for maths mode and are meant to be joined by an
- * equals sign: δ_B0 = wL⁴/8EI, then the same with numbers. What the numbers come to, in kN, m and mm, is `display`.
+ * equals sign: δ_B0 = wL⁴/8EI, then the same with numbers. What the numbers come to, in the units of the working, is
+ * `display`.
  */
 export type DerivationStep = {
   /** Unique in the derivation, e.g. "gap-B". */
@@ -55,4 +71,6 @@ export type DeriveInput = {
   redundants?: readonly Redundant[] | undefined;
   /** Letters of a template instance; loads in the order of the beam's. */
   names?: { lengths: readonly NamedLength[]; loads: readonly LoadName[] } | undefined;
+  /** Worked in kN, m and mm, or in kip, ft and in; metric where left out. */
+  system?: UnitSystemName | undefined;
 };

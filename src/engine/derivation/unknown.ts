@@ -16,19 +16,30 @@ export type Unknown = {
   tex: string;
   /** Its sense against the engine's: anticlockwise and sagging positive. */
   sense: 1 | -1;
-  /** What tells its flexibility from another's: B, or θB where the reaction at B is a redundant too. */
+  /** What tells its flexibility from another's, as TeX: B, or θ where the reaction at B is a redundant too. */
   index: string;
+  /** The same for step ids. */
+  key: string;
 };
 
 /** The movement at a redundant is a deflection or a rotation. */
 export const moves = ({ kind }: Unknown): 'deflection' | 'rotation' =>
   kind === 'reaction' ? 'deflection' : 'rotation';
 
-/** δ_B0 or θ_B0 */
-export const gapTex = (unknown: Unknown): string =>
-  `${unknown.kind === 'reaction' ? '\\delta' : '\\theta'}_{${unknown.index}0}`;
+/** A redundant is a force or a moment. */
+export const acts = ({ kind }: Unknown): 'force' | 'moment' => (kind === 'reaction' ? 'force' : 'moment');
 
-export const flexibilityTex = (a: Unknown, b: Unknown): string => `f_{${a.index}${b.index}}`;
+/** δ_B or θ_B with what it is due to: 0 for all of the released beam, w for one load. */
+export const gapTex = (unknown: Unknown, cause = '0'): string => {
+  const comma = cause === '0' ? '' : ',';
+  return `${unknown.kind === 'reaction' ? '\\delta' : '\\theta'}_{${unknown.letter}${comma}${cause}}`;
+};
+
+/** f_BB, f_{Bθ}; a control word must not run into the letter after it. */
+export function flexibilityTex({ index: a }: Unknown, { index: b }: Unknown, part = ''): string {
+  const gap = a.startsWith('\\') && !a.endsWith('}') && !b.startsWith('\\') ? ' ' : '';
+  return `f_{${a}${gap}${b}${part && `,${part}`}}`;
+}
 
 export function unknownsOf(beam: NamedBeam, redundants: readonly Redundant[]): Unknown[] {
   let unsupported = 0;
@@ -45,26 +56,31 @@ export function unknownsOf(beam: NamedBeam, redundants: readonly Redundant[]): U
         tex: `M_{${letter}}`,
         sense: 1,
         index: letter,
+        key: letter,
       };
     }
     const support = beam.supports.find(({ index }) => index === redundant.support)!;
     const vertical = redundant.component === 'vertical';
+    const { letter } = support;
     return {
       redundant,
       kind: vertical ? 'reaction' : 'fixing',
       x: support.x,
-      letter: support.letter,
+      letter,
       support,
       tex: vertical ? reactionTex(support) : fixingTex(support),
       sense: vertical ? 1 : fixingSense(beam, support),
-      index: support.letter,
+      index: letter,
+      key: letter,
     };
   });
+  const isTwin = (unknown: Unknown) =>
+    unknown.kind !== 'reaction' && named.some((other) => other !== unknown && other.x === unknown.x);
+  const isOnlyTwin = named.filter(isTwin).length === 1;
   return named.map((unknown) => {
-    const twin = named.some((other) => other !== unknown && other.letter === unknown.letter);
-    return twin && unknown.kind !== 'reaction'
-      ? { ...unknown, index: `{\\theta ${unknown.letter}}` }
-      : unknown;
+    if (!isTwin(unknown)) return unknown;
+    const index = isOnlyTwin ? '\\theta' : `\\theta_{${unknown.letter}}`;
+    return { ...unknown, index, key: `turn-${unknown.letter}` };
   });
 }
 

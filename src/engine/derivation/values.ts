@@ -30,12 +30,12 @@ export function work(beam: NamedBeam, redundants?: readonly Redundant[]): Worked
     solution,
     unknowns,
     parts: partsOf(beam, unknowns),
-    gaps: forceMethod.gaps.map((gap, i) => gap * against[i]!),
+    gaps: forceMethod.gaps.map((gap, i) => gap * against[i]! + 0),
     flexibility: forceMethod.flexibility.map((row, i) =>
       row.map((f, j) => (isNothing(forceMethod, i, j) ? 0 : f * unknowns[i]!.sense * unknowns[j]!.sense)),
     ),
     imposed: forceMethod.imposed.map((movement, i) => movement * against[i]! + 0),
-    values: forceMethod.values.map((value, i) => value * unknowns[i]!.sense),
+    values: forceMethod.values.map((value, i) => value * unknowns[i]!.sense + 0),
   };
 }
 

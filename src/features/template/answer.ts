@@ -1,4 +1,4 @@
-import { type DerivationStep, type DisplayUnit, derive } from '@/engine/derivation';
+import { type DerivationStep, derive, SI_UNITS } from '@/engine/derivation';
 import type { Redundant } from '@/engine/model';
 import { toSolveAnswer } from '@/features/beam/solve';
 import type { TemplateEvaluation } from './evaluate';
@@ -14,20 +14,6 @@ export const derivationOf = (
     redundants,
     names: { lengths: instance.dimensions, loads: instance.loadNames },
   });
-
-/** The units of an endpoint: a step's value is SI there, whatever its TeX is written in. */
-const SI_UNITS: Record<DisplayUnit, string> = {
-  '': '',
-  m: 'm',
-  mm: 'm',
-  mrad: 'rad',
-  kN: 'N',
-  kNm: 'N·m',
-  'mm/kN': 'm/N',
-  'mm/kNm': 'm/(N·m)',
-  'mrad/kN': 'rad/N',
-  'mrad/kNm': 'rad/(N·m)',
-};
 
 /** The answer of POST /api/v1/templates/{slug}/evaluate. A rule that nothing is known for yet is left out. */
 export const toEvaluateAnswer = (evaluation: TemplateEvaluation, revision: number): EvaluateAnswer => ({

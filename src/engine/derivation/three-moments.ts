@@ -1,0 +1,301 @@
+import {
+  type ChartTerm,
+  chartTerms,
+  constant,
+  divide,
+  type Expression,
+  expand,
+  multiply,
+  negate,
+  simplest,
+  subtract,
+  symbol,
+  symbolsOf,
+  texOf,
+} from '../chart/index';
+import { defineRedundants, FEW } from './compatibility';
+import { type NamedBeam, type NamedSupport, settlementOf } from './named-beam';
+import { type Piece, partOn } from './pieces';
+import { supportMoment, supportMomentTex } from './reactions';
+import { momentAt } from './statics';
+import { calculate, chartsOf } from './step';
+import { aligned, equationsTex, type System, solutionSteps } from './system';
+import type { DerivationStep } from './types';
+import type { Unknown } from './unknown';
+import type { Worked } from './values';
+import { negativeNote } from './words';
+
+/** A span between two supports of a continuous beam. */
+type Span = { left: NamedSupport; right: NamedSupport; length: Expression; ei: Expression };
+
+/** The load term of a span at one of its ends: its letter, and what it is; null for a span without load. */
+type LoadTerm = { tex: string; value: Expression; terms: ChartTerm[] };
+
+/**
+ * The three-moment equations of a continuous beam whose support moments are the redundants: the compatibility of the
+ * slopes over every inner support, times 6EI. Null where the usual form does not hold: more than one EI, shear, springs,
+ * couples over supports, more redundants than are worked in full.
+ */
+export function threeMomentSteps(worked: Worked, pieces: readonly Piece[] | null): DerivationStep[] | null {
+  const { beam, unknowns } = worked;
+  if (!pieces || unknowns.length > FEW || !isUsual(beam, unknowns, pieces)) return null;
+  const spans = pieces.map(({ vertical: [left, right], ei }): Span => {
+    const length = expand(subtract(right!.at, left!.at));
+    return { left: left!, right: right!, length, ei };
+  });
+  const loads = spans.map((span) => [loadTerm(beam, span, 'left'), loadTerm(beam, span, 'right')] as const);
+  if (loads.flat().some((term) => term === null)) return null;
+  const known = loads as readonly (readonly [LoadTerm, LoadTerm])[];
+  const outer = outerMoments(worked, spans);
+  defineRedundants(worked);
+  return [...loadSteps(beam, spans, known), ...outer, ...equations(worked, spans, known)];
+}
+
+function isUsual(
+  { groups, letters, beam }: NamedBeam,
+  unknowns: readonly Unknown[],
+  pieces: readonly Piece[],
+): boolean {
+  const ei = new Set(pieces.map((piece) => symbolsOf(piece.ei).join()));
+  const isPlain = pieces.every(
+    ({ released, ga, vertical }) =>
+      released.kind === 'simple' &&
+      ga === null &&
+      vertical.every(({ support }) => support.vertical.kind === 'rigid'),
+  );
+  const supports = new Set(pieces.flatMap(({ vertical }) => vertical.map(({ x }) => x)));
+  const hasCouple = groups.some(({ numeric }) => numeric.kind === 'couple' && supports.has(numeric.at));
+  const isInternal = unknowns.every(({ kind, support }) => kind === 'internal' && support !== null);
+  return (
+    unknowns.length > 0 &&
+    isInternal &&
+    isPlain &&
+    ei.size === 1 &&
+    !hasCouple &&
+    beam.hinges.length === 0 &&
+    letters.has('EI')
+  );
+}
+
+/** 6EI times the slope of the span's end under its own loads, so that a load that sags it is positive. */
+function loadTerm(beam: NamedBeam, { left, right, ei }: Span, end: 'left' | 'right'): LoadTerm | null {
+  const [at, other] = end === 'left' ? [left, right] : [right, left];
+  const released = { kind: 'simple', left: left.at, right: right.at } as const;
+  const own = beam.groups
+    .flatMap(({ fine }) => fine)
+    .flatMap((load) => partOn(beam, load, left.x, right.x) ?? []);
+  const found = own.map((load) => chartTerms(released, load, at.at, 'slope', beam.setting(ei)));
+  if (!found.every((terms) => terms !== null)) return null;
+  const times = multiply(constant(end === 'left' ? 6 : -6), ei);
+  const terms = found.flat().map((term) => ({ ...term, value: multiply(term.value, times) }));
+  return { tex: `K_{${at.letter}${other.letter}}`, value: terms.flatMap(({ value }) => value), terms };
+}
+
+/** One step for each load term that counts: at the inner supports. Defines their letters. */
+function loadSteps(
+  beam: NamedBeam,
+  spans: readonly Span[],
+  loads: readonly (readonly [LoadTerm, LoadTerm])[],
+): DerivationStep[] {
+  return spans.flatMap(({ left, right }, k) => {
+    const ends = [
+      { at: left, term: loads[k]![0], isInner: k > 0 },
+      { at: right, term: loads[k]![1], isInner: k < spans.length - 1 },
+    ];
+    return ends.flatMap(({ at, term, isInner }) => {
+      if (!isInner || term.value.length === 0) return [];
+      const charts = chartsOf(term.terms);
+      const step = calculate(beam.letters, {
+        id: `load-term-${term.tex.replaceAll(/[^A-Z]/g, '')}`,
+        title: `Load term of span ${left.letter}–${right.letter} at ${at.letter}: 6EI times its slope there under its own load`,
+        left: term.tex,
+        expression: term.value,
+        kind: 'load term',
+        scale: 'base',
+        extra: { charts, figure: { structure: 'released' } },
+      });
+      beam.letters.define(term.tex, beam.letters.of(term.value), 'load term');
+      return [step];
+    });
+  });
+}
+
+/** The moments over the outermost supports where the beam overhangs them; statics alone finds them. */
+function outerMoments({ beam, parts }: Worked, spans: readonly Span[]): DerivationStep[] {
+  const ends = [
+    { support: spans[0]!.left, side: 'left' as const, isEnd: spans[0]!.left.x === 0 },
+    {
+      support: spans.at(-1)!.right,
+      side: 'right' as const,
+      isEnd: spans.at(-1)!.right.x === beam.beam.length,
+    },
+  ];
+  return ends.flatMap(({ support, side, isEnd }) => {
+    if (isEnd) return [];
+    const moment = momentAt(beam, parts, support, side);
+    return moment.length === 0 ? [] : [supportMoment(beam, support, moment)];
+  });
+}
+
+function equations(
+  worked: Worked,
+  spans: readonly Span[],
+  loads: readonly (readonly [LoadTerm, LoadTerm])[],
+): DerivationStep[] {
+  const rows = worked.unknowns.map((_, k) => rowOf(worked, spans, loads, k));
+  return worked.unknowns.length === 1 ? one(worked, rows[0]!) : several(worked, rows);
+}
+
+/** M_A L₁ + 2M_B(L₁ + L₂) + M_C L₂ = right, over the support between spans k and k + 1. */
+type Row = {
+  /** The support moments with what multiplies them. */
+  left: { tex: string; factor: Expression; isKnown: boolean }[];
+  right: Expression;
+  /** The same with the load terms' closed forms. */
+  closed: Expression;
+};
+
+function rowOf(
+  { beam, unknowns }: Worked,
+  spans: readonly Span[],
+  loads: readonly (readonly [LoadTerm, LoadTerm])[],
+  k: number,
+): Row {
+  const [before, after] = [spans[k]!, spans[k + 1]!];
+  const tex = (support: NamedSupport) => supportMomentTex(support);
+  const isUnknown = (support: NamedSupport) => unknowns.some(({ x }) => x === support.x);
+  const both = expand([...before.length, ...after.length]);
+  const left = [
+    { support: before.left, factor: before.length },
+    { support: before.right, factor: multiply(constant(2), both) },
+    { support: after.right, factor: after.length },
+  ]
+    .filter(({ support }) => beam.letters.has(tex(support)))
+    .map(({ support, factor }) => ({ tex: tex(support), factor, isKnown: !isUnknown(support) }));
+  const terms = [loads[k]![1], loads[k + 1]![0]].filter(({ value }) => value.length > 0);
+  const settled = settlements(before, after);
+  const known = left.filter(({ isKnown }) => isKnown);
+  return {
+    left,
+    right: [...terms.flatMap((term) => negate(symbol(term.tex))), ...settled],
+    closed: simplest([
+      ...terms.flatMap(({ value }) => negate(value)),
+      ...settled,
+      ...known.flatMap(({ tex: moment, factor }) => negate(multiply(symbol(moment), factor))),
+    ]),
+  };
+}
+
+/** 6EI ((Δ_B − Δ_A)/L₁ + (Δ_B − Δ_C)/L₂) */
+function settlements(before: Span, after: Span): Expression {
+  const at = (support: NamedSupport) => settlementOf(support) ?? [];
+  const over = (first: NamedSupport, second: NamedSupport, length: Expression) =>
+    divide(subtract(at(first), at(second)), length);
+  const turns = [
+    ...over(before.right, before.left, before.length),
+    ...over(after.left, after.right, after.length),
+  ];
+  return turns.flatMap((term) => multiply([term], multiply(constant(6), before.ei)));
+}
+
+const rowTex = (beam: NamedBeam, { left, right }: Row): string => {
+  const letters = beam.letters.symbols();
+  const sides = left.map(({ tex, factor }) => texOf(multiply(factor, symbol(tex)), letters));
+  return `${sides.join('+')}=${texOf(right, letters)}`;
+};
+
+const TITLE = 'Three-moment equation: the slopes on either side';
+
+/** M_B = (−K_BA − K_BC − M_C L₂) / 2(L₁ + L₂), and in one formula. */
+function one(worked: Worked, row: Row): DerivationStep[] {
+  const { beam, unknowns, values } = worked;
+  const unknown = unknowns[0]!;
+  const own = row.left.find(({ isKnown }) => !isKnown)!;
+  const known = row.left.filter(({ isKnown }) => isKnown);
+  const right = [...row.right, ...known.flatMap(({ tex, factor }) => negate(multiply(symbol(tex), factor)))];
+  const common = { left: unknown.tex, value: values[0]!, kind: 'moment', scale: 'base' } as const;
+  const closed = simplest(divide(row.closed, own.factor));
+  return [
+    calculate(beam.letters, {
+      ...common,
+      id: 'compatibility',
+      title: `${TITLE} of ${unknown.letter} are the same`,
+      left: `${rowTex(beam, row)}\\quad\\Rightarrow\\quad ${unknown.tex}`,
+      expression: divide(right, own.factor),
+      extra: {
+        key: true,
+        figure: { structure: 'built' },
+        ...(values[0]! < 0 && { note: negativeNote(unknown) }),
+      },
+    }),
+    calculate(beam.letters, {
+      ...common,
+      id: 'closed-form',
+      title: 'The same in one formula',
+      expression: closed,
+    }),
+  ];
+}
+
+function several(worked: Worked, rows: readonly Row[]): DerivationStep[] {
+  const { beam, unknowns, values } = worked;
+  const { letters } = beam;
+  const coefficients = rows.map(({ left }, i) =>
+    unknowns.map((unknown) => {
+      const term = left.find(({ tex }) => tex === unknown.tex);
+      if (!term) return null;
+      const tex = `c_{${unknowns[i]!.letter}${unknown.letter}}`;
+      letters.define(tex, letters.of(term.factor), 'length');
+      return { tex, factor: term.factor };
+    }),
+  );
+  const rights = rows.map(({ left, right }, i) => {
+    const known = left.filter(({ isKnown }) => isKnown);
+    const whole = [...right, ...known.flatMap(({ tex, factor }) => negate(multiply(symbol(tex), factor)))];
+    return letters.define(`d_{${unknowns[i]!.letter}}`, letters.of(whole), 'load term');
+  });
+  const system: System = {
+    letters,
+    unknowns,
+    values,
+    coefficients: coefficients.map((row) => row.map((entry) => entry?.tex ?? null)),
+    rights,
+    kinds: unknowns.map(() => 'load term'),
+  };
+  return [
+    matrix(worked, coefficients),
+    {
+      id: 'compatibility',
+      title: `${TITLE} of each inner support are the same`,
+      symbols: aligned(rows.map((row) => rowTex(beam, row).replace('=', '&='))),
+      numbers: equationsTex(system),
+      value: null,
+      unit: '',
+      display: '',
+      figure: { structure: 'built' },
+    },
+    ...solutionSteps(system),
+  ];
+}
+
+/** 6EI·F: what a unit moment over a support turns its spans' ends by, L/3EI near it and L/6EI at their far ends. */
+function matrix(
+  { beam: { letters } }: Worked,
+  coefficients: readonly (readonly ({ tex: string; factor: Expression } | null)[])[],
+): DerivationStep {
+  const write = (entry: (of: { tex: string; factor: Expression }) => string) =>
+    `\\begin{bmatrix}${coefficients.map((row) => row.map((of) => (of ? entry(of) : '0')).join('&')).join('\\\\')}\\end{bmatrix}`;
+  const numbers = letters.numbers('base', 6);
+  return {
+    id: 'matrix',
+    title:
+      '6EI times the flexibility matrix: a unit moment turns the ends of its spans by L/3EI, and their far ends by L/6EI',
+    symbols: `6EI\\,\\mathbf{F}=${write(({ tex }) => tex)}=${write(({ factor }) => texOf(factor, letters.symbols()))}`,
+    numbers: write(({ tex }) => numbers.atom(tex).tex),
+    value: null,
+    unit: '',
+    display: '',
+    note: `In ${letters.units.of('length', 'base')}. By reciprocity it is symmetric.`,
+    figure: { structure: 'unit', redundant: 0 },
+  };
+}

@@ -41,7 +41,7 @@ function signsOf({ letters }: NamedBeam): string {
     moment: 'C is a couple, anticlockwise',
     curvature: 'κ is a free curvature, sagging',
     spring: 'k is the stiffness of a spring',
-    'rotational spring': 'k_θ is the stiffness of a spring against turning',
+    'rotational spring': 'k_{θ} is the stiffness of a spring against turning',
   };
   const used = Object.entries(words).flatMap(([kind, text]) => (kinds.some((k) => k === kind) ? [text] : []));
   return used.length > 0 ? `Here ${used.join('; ')}.` : '';

@@ -121,7 +121,11 @@ function Formula({ block }: { block: Extract<SheetBlock, { kind: 'formula' }> })
           <Tex tex={line} />
         </p>
       ))}
-      {note !== undefined && <p className="cs-note">{note}</p>}
+      {note !== undefined && (
+        <p className="cs-note">
+          <RichHtml text={note} />
+        </p>
+      )}
     </>
   );
 }

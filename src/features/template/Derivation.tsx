@@ -31,7 +31,11 @@ export function Derivation({ steps, formulas }: WorkedSteps) {
                 {display} <small className="text-schedule font-normal text-ink-2">{unitText(unit)}</small>
               </span>
             )}
-            {note && <p className="col-span-2 col-start-2 mt-4 text-note text-ink-2">{note}</p>}
+            {note && (
+              <p className="col-span-2 col-start-2 mt-4 text-note text-ink-2">
+                <RichHtml text={note} />
+              </p>
+            )}
             {charts.map((chart) => (
               <p key={chart.id} className="col-span-2 col-start-2 mt-4 text-note text-ink-2 italic">
                 {chart.title}: {chart.source}

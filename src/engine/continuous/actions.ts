@@ -1,62 +1,48 @@
 import type { Load } from '../model/index';
 import type { Geometry } from './geometry';
 
-/**
- * What acts on a beam. On piece k, at s from its left end, the downward load is start[k] + rate[k]·s and the free
- * curvature is curvature[k]; at point i act the downward force[i] and the anticlockwise couple[i].
- */
-export class Actions {
-  start = new Float64Array(0);
-  rate = new Float64Array(0);
-  curvature = new Float64Array(0);
-  force = new Float64Array(0);
-  couple = new Float64Array(0);
-
-  /** The sum of the loads, which act at points of the geometry; those of no length cover no piece. */
-  take(geometry: Geometry, loads: readonly Load[]): void {
-    this.clear(geometry.points);
-    const { force, couple } = this;
-    for (let i = 0; i < loads.length; i++) {
-      const load = loads[i]!;
-      if (load.kind === 'line') this.spread(geometry, load.from, load.to, load.w0, load.w1);
-      else if (load.kind === 'point') force[geometry.pointAt(load.at)]! += load.p;
-      else if (load.kind === 'couple') couple[geometry.pointAt(load.at)]! += load.m;
-      else this.bend(geometry, load.from, load.to, load.kappa);
-    }
+/** Puts the sum of the loads on the pieces; they act at points of the geometry. Those of no length cover no piece. */
+export function applyLoads(geometry: Geometry, loads: readonly Load[]): void {
+  clear(geometry);
+  const { piece } = geometry;
+  for (let i = 0; i < loads.length; i++) {
+    const load = loads[i]!;
+    if (load.kind === 'line') spread(geometry, load.from, load.to, load.w0, load.w1);
+    else if (load.kind === 'point') piece[geometry.pointAt(load.at)]!.force += load.p;
+    else if (load.kind === 'couple') piece[geometry.pointAt(load.at)]!.couple += load.m;
+    else bend(geometry, load.from, load.to, load.kappa);
   }
+}
 
-  private spread(geometry: Geometry, from: number, to: number, w0: number, w1: number): void {
-    const { start, rate } = this;
-    const { x } = geometry;
-    const slope = w1 === w0 || to === from ? 0 : (w1 - w0) / (to - from);
-    const last = geometry.pointAt(to);
-    for (let k = geometry.pointAt(from); k < last; k++) {
-      start[k]! += w0 + slope * (x[k]! - from);
-      rate[k]! += slope;
-    }
+function clear({ piece, points }: Geometry): void {
+  for (let k = 0; k < points; k++) {
+    const record = piece[k]!;
+    record.start = 0;
+    record.rate = 0;
+    record.curvature = 0;
+    record.force = 0;
+    record.couple = 0;
   }
+}
 
-  private bend(geometry: Geometry, from: number, to: number, kappa: number): void {
-    const last = geometry.pointAt(to);
-    for (let k = geometry.pointAt(from); k < last; k++) this.curvature[k]! += kappa;
+function spread(geometry: Geometry, from: number, to: number, w0: number, w1: number): void {
+  const { piece } = geometry;
+  const last = geometry.pointAt(to);
+  let k = geometry.pointAt(from);
+  if (w0 === w1) {
+    for (; k < last; k++) piece[k]!.start += w0;
+    return;
   }
+  const rate = (w1 - w0) / (to - from);
+  for (; k < last; k++) {
+    const record = piece[k]!;
+    record.start += w0 + rate * (record.from - from);
+    record.rate += rate;
+  }
+}
 
-  private clear(points: number): void {
-    if (points > this.force.length) {
-      const room = 2 * points;
-      this.start = new Float64Array(room);
-      this.rate = new Float64Array(room);
-      this.curvature = new Float64Array(room);
-      this.force = new Float64Array(room);
-      this.couple = new Float64Array(room);
-      return;
-    }
-    for (let i = 0; i < points; i++) {
-      this.start[i] = 0;
-      this.rate[i] = 0;
-      this.curvature[i] = 0;
-      this.force[i] = 0;
-      this.couple[i] = 0;
-    }
-  }
+function bend(geometry: Geometry, from: number, to: number, kappa: number): void {
+  const { piece } = geometry;
+  const last = geometry.pointAt(to);
+  for (let k = geometry.pointAt(from); k < last; k++) piece[k]!.curvature += kappa;
 }

@@ -1,11 +1,15 @@
 import type { Diagrams, Reaction } from '../beam/index';
 import type { Beam, Load } from '../model/index';
-import type { Piecewise } from '../polynomial/index';
-import { Actions } from './actions';
-import { Curves } from './curves';
-import { Flexibility } from './flexibility';
+import { applyLoads } from './actions';
+import { diagramsOf } from './diagrams';
+import { ExtremeFinder } from './extremes';
 import { Geometry } from './geometry';
-import { Statics } from './statics';
+import { factoriseRigid, solveRigid } from './rigid';
+import { measureSpan } from './span';
+import { SprungEquations } from './sprung';
+import { hangOverhangs } from './statics';
+import { FastStation, readStations } from './stations';
+import { Sweep } from './sweep';
 
 /**
  * The fast solver of continuous beams, in plain doubles, for sweeps and superposition: any spans and overhangs, rigid or
@@ -19,52 +23,66 @@ import { Statics } from './statics';
  */
 export class ContinuousBeam {
   private readonly geometry = new Geometry();
-  private readonly flexibility = new Flexibility();
-  private readonly actions = new Actions();
-  private readonly statics = new Statics();
-  private readonly curves = new Curves();
+  private readonly sprung = new SprungEquations();
+  private readonly sweep = new Sweep();
+  private readonly finder = new ExtremeFinder();
+  private readonly station: FastStation[] = [];
   private beam!: Beam;
 
   /** Another beam in the same arrays; false where it is none of the class, or too ill-conditioned for doubles. */
   take(beam: Beam): boolean {
     this.beam = beam;
-    return this.geometry.take(beam) && this.flexibility.take(this.geometry);
+    return this.geometry.take(beam) && this.factorise();
+  }
+
+  private factorise(): boolean {
+    const { geometry } = this;
+    const { supports, support, span, piece } = geometry;
+    for (let j = 0; j + 1 < supports; j++) {
+      measureSpan(span[j]!, piece, support[j]!, support[j + 1]!);
+    }
+    return geometry.sprung ? this.sprung.factorise(geometry) : factoriseRigid(geometry);
   }
 
   /** The beam under the loads; `movements: false` leaves the supports where they are, for superposition. */
   solve(loads: readonly Load[] = this.beam.loads, { movements = true }: { movements?: boolean } = {}): void {
-    const { geometry, flexibility, actions, statics, curves } = this;
-    actions.take(geometry, loads);
-    statics.take(geometry, flexibility, actions, movements ? 1 : 0);
-    curves.take(geometry, actions, statics);
+    const { geometry } = this;
+    applyLoads(geometry, loads);
+    const moved = movements ? 1 : 0;
+    const hanging = hangOverhangs(geometry);
+    if (geometry.sprung) this.sprung.solve(geometry, moved, hanging);
+    else solveRigid(geometry, moved);
+    this.sweep.run(geometry, moved);
+  }
+
+  extremes(): ExtremeFinder {
+    this.finder.find(this.geometry);
+    return this.finder;
+  }
+
+  stations(count = 11): readonly FastStation[] {
+    const { station, geometry } = this;
+    while (station.length < count) station.push(new FastStation());
+    const step = geometry.length / (count - 1);
+    for (let i = 0; i < count; i++) station[i]!.x = i * step;
+    station[count - 1]!.x = geometry.length;
+    readStations(geometry, station, count);
+    return station;
   }
 
   /** The diagrams of the last solve, as the beam solver's: every diagram of one beam has the same breaks. */
   diagrams(): Diagrams {
-    const { curves, geometry } = this;
-    const pieces = geometry.points - 1;
-    const breaks = geometry.x.slice(0, geometry.points);
-    const piecewise = (degree: number, coefficients: Float64Array): Piecewise => ({
-      breaks,
-      degree,
-      coefficients: coefficients.slice(0, pieces * (degree + 1)),
-    });
-    return {
-      shear: piecewise(2, curves.shear),
-      moment: piecewise(3, curves.moment),
-      slope: piecewise(4, curves.slope),
-      deflection: piecewise(5, curves.deflection),
-    };
+    return diagramsOf(this.geometry);
   }
 
   /** The reactions of the last solve, in the order of the document. */
   reactions(): Reaction[] {
-    const { geometry, statics } = this;
+    const { supports, support } = this.geometry;
     const reactions = this.beam.supports.map(({ at }): Reaction => ({ at, vertical: 0, moment: 0 }));
-    for (let j = 0; j < geometry.supports; j++) {
-      const reaction = reactions[geometry.number[j]!]!;
-      reaction.vertical = statics.up[j]! + 0;
-      reaction.moment = statics.couple[j]! + 0;
+    for (let j = 0; j < supports; j++) {
+      const { number, up, couple } = support[j]!;
+      reactions[number]!.vertical = up + 0;
+      reactions[number]!.moment = couple + 0;
     }
     return reactions;
   }

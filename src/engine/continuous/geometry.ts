@@ -1,39 +1,28 @@
-import type { Beam, Restraint, Segment } from '../model/index';
+import type { Beam, Load, Restraint, Segment } from '../model/index';
+import { Piece, Span, Support } from './records';
 
-/** Points a workspace has room for at first; it doubles as it must. */
-const ROOM = 16;
+/** Positions up to this many are put in order one by one, which for few is faster than the library's sort. */
+const FEW = 24;
 
 /**
- * A continuous beam as arrays, without its loads: points where anything starts, stops or acts, pieces between them,
- * supports that hold the beam up, and spans between those. All ascending; piece k lies between points k and k + 1,
- * span j between supports j and j + 1. The arrays are reused and may be longer than what they hold.
+ * A continuous beam as records in order from left to right: supports that hold it up, spans between those, and pieces
+ * between the points where anything starts, stops or acts. Piece k lies between points k and k + 1; the one after the
+ * last stands for the right end of the beam. The records are reused: there may be more than `supports` and `points`.
  */
 export class Geometry {
   length = 0;
   points = 0;
-  /** Positions of the points, m. */
-  x = new Float64Array(ROOM);
-  /** Of each piece: its length, 1/EI, and 1/GA (0 where it does not shear). */
-  h = new Float64Array(ROOM);
-  bending = new Float64Array(ROOM);
-  shearing = new Float64Array(ROOM);
-
   supports = 0;
-  /** Of each support: its number in the document, its point, and its position. */
-  number = new Int32Array(ROOM);
-  point = new Int32Array(ROOM);
-  at = new Float64Array(ROOM);
-  /** 1/k against vertical movement (0: rigid) and the prescribed rise. */
-  give = new Float64Array(ROOM);
-  rise = new Float64Array(ROOM);
-  /** 1 where rotation is held, 1/k against it (0: rigid), and the prescribed rotation. */
-  held = new Uint8Array(ROOM);
-  turnGive = new Float64Array(ROOM);
-  turn = new Float64Array(ROOM);
   /** Whether any support is a spring against vertical movement. */
   sprung = false;
+  readonly piece: Piece[] = [];
+  readonly support: Support[] = [];
+  readonly span: Span[] = [];
+  /** V, M, θ and v just inside the left end of every piece, then just inside its right end: 8 numbers a piece. */
+  states = new Float64Array(8 * 16);
 
-  private marks = new Float64Array(ROOM);
+  private marks = new Float64Array(16);
+  private marked = 0;
 
   /**
    * Takes the beam in; false where it is none of the class: hinges, or rotation held where nothing holds the beam up.
@@ -42,140 +31,150 @@ export class Geometry {
   take(beam: Beam): boolean {
     if (beam.hinges.length > 0 || !this.takeSupports(beam)) return false;
     this.length = beam.length;
-    this.mergePoints(this.collectMarks(beam));
+    this.markPositions(beam);
+    this.mergePoints();
     this.takeSegments(beam.segments);
     return true;
   }
 
   /** The number of the point at x. Fails with RangeError where there is none. */
   pointAt(x: number): number {
-    const positions = this.x;
+    const { piece } = this;
     let low = 0;
     let high = this.points - 1;
+    if (x === this.length) return high;
     while (low < high) {
       const middle = (low + high) >> 1;
-      if (positions[middle]! < x) low = middle + 1;
+      if (piece[middle]!.from < x) low = middle + 1;
       else high = middle;
     }
-    if (positions[low] !== x) throw new RangeError(`no load of the beam acts or ends at ${x} m`);
+    if (piece[low]!.from !== x) throw new RangeError(`no load of the beam acts or ends at ${x} m`);
     return low;
   }
 
   private takeSupports({ supports }: Beam): boolean {
-    this.fitSupports(supports.length);
-    const { number, at } = this;
+    const { support, span } = this;
+    while (support.length < supports.length) {
+      support.push(new Support());
+      span.push(new Span());
+    }
     let count = 0;
+    this.sprung = false;
     for (let i = 0; i < supports.length; i++) {
-      const support = supports[i]!;
-      if (support.vertical.kind === 'free') {
-        if (support.rotation.kind !== 'free') return false;
+      const { at, vertical, rotation } = supports[i]!;
+      if (vertical.kind === 'free') {
+        if (rotation.kind !== 'free') return false;
         continue;
       }
-      let j = count++;
-      for (; j > 0 && at[j - 1]! > support.at; j--) {
-        at[j] = at[j - 1]!;
-        number[j] = number[j - 1]!;
-      }
-      at[j] = support.at;
-      number[j] = i;
+      const record = support[count]!;
+      record.number = i;
+      record.at = at;
+      this.restrain(record, vertical, rotation);
+      this.sortIn(count++);
     }
     this.supports = count;
-    this.sprung = false;
-    for (let j = 0; j < count; j++)
-      this.restrain(j, supports[number[j]!]!.vertical, supports[number[j]!]!.rotation);
     return true;
   }
 
-  private restrain(j: number, vertical: Restraint, rotation: Restraint): void {
-    this.give[j] = vertical.kind === 'spring' ? 1 / vertical.stiffness : 0;
-    this.rise[j] = vertical.kind === 'free' ? 0 : vertical.movement;
-    this.held[j] = rotation.kind === 'free' ? 0 : 1;
-    this.turnGive[j] = rotation.kind === 'spring' ? 1 / rotation.stiffness : 0;
-    this.turn[j] = rotation.kind === 'free' ? 0 : rotation.movement;
-    if (vertical.kind === 'spring') this.sprung = true;
+  /** Brings support j, the last so far, to its place. */
+  private sortIn(j: number): void {
+    const { support } = this;
+    const record = support[j]!;
+    for (; j > 0 && support[j - 1]!.at > record.at; j--) support[j] = support[j - 1]!;
+    support[j] = record;
   }
 
-  /** Positions strictly inside the beam, beside those of what holds it up; ascending, repeats included. */
-  private collectMarks({ length, segments, supports, loads }: Beam): number {
-    this.fitMarks(segments.length + supports.length + 2 * loads.length);
-    const { marks } = this;
-    let count = 0;
-    let ascending = true;
-    const mark = (x: number) => {
-      if (x <= 0 || x >= length) return;
-      if (count > 0 && marks[count - 1]! > x) ascending = false;
-      marks[count++] = x;
-    };
-    for (let i = 0; i + 1 < segments.length; i++) mark(segments[i]!.to);
-    for (let i = 0; i < supports.length; i++)
-      if (supports[i]!.vertical.kind === 'free') mark(supports[i]!.at);
-    for (let i = 0; i < loads.length; i++) {
-      const load = loads[i]!;
-      if (load.kind === 'point' || load.kind === 'couple') mark(load.at);
-      else {
-        mark(load.from);
-        mark(load.to);
-      }
+  private restrain(
+    record: Support,
+    vertical: Exclude<Restraint, { kind: 'free' }>,
+    rotation: Restraint,
+  ): void {
+    record.rise = vertical.movement;
+    record.give = 0;
+    record.held = false;
+    record.turn = 0;
+    record.turnGive = 0;
+    if (vertical.kind === 'spring') {
+      record.give = 1 / vertical.stiffness;
+      this.sprung = true;
     }
-    if (!ascending) marks.subarray(0, count).sort();
-    return count;
+    if (rotation.kind !== 'free') {
+      record.held = true;
+      record.turn = rotation.movement;
+      if (rotation.kind === 'spring') record.turnGive = 1 / rotation.stiffness;
+    }
   }
 
-  private mergePoints(marked: number): void {
-    this.fitPoints(marked + this.supports + 2);
-    const { x, at, point, marks, supports, length } = this;
+  /** Positions inside the beam of steps, loads, and supports that hold nothing: ascending, repeats included. */
+  private markPositions({ segments, supports, loads }: Beam): void {
+    const most = segments.length + supports.length + 2 * loads.length;
+    if (most > this.marks.length) this.marks = new Float64Array(2 * most);
+    this.marked = 0;
+    for (let i = 0; i + 1 < segments.length; i++) this.mark(segments[i]!.to);
+    if (this.supports < supports.length) {
+      for (let i = 0; i < supports.length; i++)
+        if (supports[i]!.vertical.kind === 'free') this.mark(supports[i]!.at);
+    }
+    for (let i = 0; i < loads.length; i++) this.markLoad(loads[i]!);
+    if (this.marked > FEW) this.marks.subarray(0, this.marked).sort();
+  }
+
+  private markLoad(load: Load): void {
+    if (load.kind === 'point' || load.kind === 'couple') this.mark(load.at);
+    else {
+      this.mark(load.from);
+      this.mark(load.to);
+    }
+  }
+
+  private mark(x: number): void {
+    if (x <= 0 || x >= this.length) return;
+    const { marks } = this;
+    let i = this.marked++;
+    if (i < FEW) for (; i > 0 && marks[i - 1]! > x; i--) marks[i] = marks[i - 1]!;
+    marks[i] = x;
+  }
+
+  private mergePoints(): void {
+    const { piece, support, marks, marked, supports, length } = this;
+    while (piece.length < marked + supports + 2) piece.push(new Piece());
+    if (8 * piece.length > this.states.length) this.states = new Float64Array(16 * piece.length);
     let last = 0;
+    let x = 0;
     let j = 0;
-    x[0] = 0;
+    piece[0]!.from = 0;
     for (let i = 0; i <= marked; i++) {
       const next = i < marked ? marks[i]! : length;
-      for (; j < supports && at[j]! <= next; j++) {
-        if (at[j]! > x[last]!) x[++last] = at[j]!;
-        point[j] = last;
+      for (; j < supports && support[j]!.at <= next; j++) {
+        const { at } = support[j]!;
+        if (at > x) {
+          piece[last]!.length = at - x;
+          x = at;
+          piece[++last]!.from = x;
+        }
+        support[j]!.point = last;
       }
-      if (next > x[last]!) x[++last] = next;
+      if (next > x) {
+        piece[last]!.length = next - x;
+        x = next;
+        piece[++last]!.from = x;
+      }
     }
     this.points = last + 1;
   }
 
   private takeSegments(segments: readonly Segment[]): void {
-    const { x, h, bending, shearing } = this;
+    const { piece } = this;
+    const last = this.points - 1;
     let k = 0;
     for (let i = 0; i < segments.length; i++) {
       const { to, ei, ga } = segments[i]!;
-      const bends = 1 / ei;
-      const shears = ga === null ? 0 : 1 / ga;
-      for (; k + 1 < this.points && x[k + 1]! <= to; k++) {
-        h[k] = x[k + 1]! - x[k]!;
-        bending[k] = bends;
-        shearing[k] = shears;
+      const bending = 1 / ei;
+      const shearing = ga === null ? 0 : 1 / ga;
+      for (; k < last && piece[k]!.from < to; k++) {
+        piece[k]!.bending = bending;
+        piece[k]!.shearing = shearing;
       }
     }
-  }
-
-  private fitSupports(count: number): void {
-    if (count <= this.at.length) return;
-    const room = 2 * count;
-    this.number = new Int32Array(room);
-    this.point = new Int32Array(room);
-    this.at = new Float64Array(room);
-    this.give = new Float64Array(room);
-    this.rise = new Float64Array(room);
-    this.held = new Uint8Array(room);
-    this.turnGive = new Float64Array(room);
-    this.turn = new Float64Array(room);
-  }
-
-  private fitMarks(count: number): void {
-    if (count > this.marks.length) this.marks = new Float64Array(2 * count);
-  }
-
-  private fitPoints(count: number): void {
-    if (count <= this.x.length) return;
-    const room = 2 * count;
-    this.x = new Float64Array(room);
-    this.h = new Float64Array(room);
-    this.bending = new Float64Array(room);
-    this.shearing = new Float64Array(room);
   }
 }

@@ -1,0 +1,55 @@
+/** A step of Newton's method that is this part of the piece is the last: the one after it would be rounding. */
+const STEP = 1e-7;
+const STEPS = 100; // bisection alone needs 60
+
+/** Zeros of c₀ + c₁ s + c₂ s² strictly between 0 and h, ascending, into `out`; their number. Closed form. */
+export function quadraticZeros(c0: number, c1: number, c2: number, h: number, out: Float64Array): number {
+  if (c2 === 0) {
+    const s = -c0 / c1;
+    if (!(s > 0 && s < h)) return 0; // also where c₁ is 0
+    out[0] = s;
+    return 1;
+  }
+  const discriminant = c1 * c1 - 4 * c0 * c2;
+  if (!(discriminant > 0)) return 0; // where it only touches zero it does not change its sign
+  const q = -0.5 * (c1 + (c1 < 0 ? -1 : 1) * Math.sqrt(discriminant)); // no difference of nearly equal numbers
+  const one = q / c2;
+  const other = c0 / q;
+  const first = Math.min(one, other);
+  const second = Math.max(one, other);
+  let count = 0;
+  if (first > 0 && first < h) out[count++] = first;
+  if (second > 0 && second < h) out[count++] = second;
+  return count;
+}
+
+/** Value of c₀ + c₁ s + c₂ s² + c₃ s³ + c₄ s⁴. */
+export const quartic = (c: Float64Array, s: number): number =>
+  c[0]! + s * (c[1]! + s * (c[2]! + s * (c[3]! + s * c[4]!)));
+
+/**
+ * The zero of a quartic in a stretch where it is monotone and changes its sign: stretch[0] to stretch[1]. Newton's
+ * method from the chord, kept inside by bisection.
+ */
+export function monotoneZero(c: Float64Array, stretch: Float64Array): number {
+  const c0 = c[0]!;
+  const c1 = c[1]!;
+  const c2 = c[2]!;
+  const c3 = c[3]!;
+  const c4 = c[4]!;
+  let from = stretch[0]!;
+  let to = stretch[1]!;
+  const last = STEP * to;
+  const low = quartic(c, from);
+  const rises = low < 0;
+  let s = from + ((to - from) * low) / (low - quartic(c, to));
+  for (let step = 0; step < STEPS; step++) {
+    const value = c0 + s * (c1 + s * (c2 + s * (c3 + s * c4)));
+    if (value < 0 === rises) from = s;
+    else to = s;
+    const next = s - value / (c1 + s * (2 * c2 + s * (3 * c3 + s * 4 * c4)));
+    if (Math.abs(next - s) <= last) return next;
+    s = next > from && next < to ? next : (from + to) / 2; // also where the derivative is 0
+  }
+  return s;
+}

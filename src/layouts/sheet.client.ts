@@ -1,4 +1,5 @@
 import { createKeyReader, takesTyping } from '@/components/ui/keys';
+import { takeLanding } from '@/components/ui/landing';
 import { keysAreOn } from '@/components/ui/use-keys';
 
 const RING_MS = 600;
@@ -47,6 +48,8 @@ function listenForTheme() {
       event.preventDefault();
       const theme = event.submitter.value;
       document.documentElement.dataset['theme'] = theme;
+      // The word that was pressed gives way to the other one.
+      [...form.querySelectorAll('button')].find(({ offsetParent }) => offsetParent !== null)?.focus();
       const secure = location.protocol === 'https:' ? '; Secure' : '';
       // biome-ignore lint/suspicious/noDocumentCookie: cookieStore is missing where the page is not served by https
       document.cookie = `theme=${theme}; Path=/; Max-Age=${YEAR_S}; SameSite=Lax${secure}`;
@@ -67,6 +70,13 @@ function watchTitleBlock() {
   }).observe(block);
 }
 
+/** A form that comes back has the focus where it is wrong; one that was taken, on what it says; a page read again, on its block. */
+function startWhereItMatters() {
+  const wrong = document.querySelector<HTMLElement>('form[method="post"] [aria-invalid="true"]');
+  const said = document.querySelector('[data-said]')?.closest<HTMLElement>('[data-zone]');
+  (takeLanding() ?? wrong ?? said)?.focus();
+}
+
 function closeMenusOnLeaving() {
   for (const menu of document.querySelectorAll<HTMLDetailsElement>('details[data-menu]')) {
     const close = () => menu.removeAttribute('open');
@@ -85,3 +95,4 @@ listenForKeys();
 listenForTheme();
 watchTitleBlock();
 closeMenusOnLeaving();
+startWhereItMatters();

@@ -37,10 +37,14 @@ export function QuantityBelow({
     ) : undefined);
   return (
     <div className="max-md:col-span-2">
-      {range && !locked && !error && (
+      {range && !locked && (reading.ok || !error) && (
         <RangeLine
           range={range}
-          ends={rangeEnds ?? [endText(range.low, entry.unit), endText(range.high, entry.unit)]}
+          ends={
+            error
+              ? undefined
+              : (rangeEnds ?? [endText(range.low, entry.unit), endText(range.high, entry.unit)])
+          }
           value={reading.ok ? reading.value : undefined}
           unit={entry.unit}
           label={label}

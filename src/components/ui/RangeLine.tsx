@@ -4,8 +4,8 @@ import { nudge, placeInRange, type QuantityRange, snapToStep, valueAtPlace } fro
 
 interface RangeLineProps {
   range: QuantityRange;
-  /** What stands under the ends: figures, or a symbol such as L. */
-  ends: readonly [string, string];
+  /** What stands under the ends: figures, or a symbol such as L; nothing where a message does. */
+  ends?: readonly [string, string] | undefined;
   /** SI; absent while the field does not read. */
   value: number | undefined;
   unit: string;
@@ -56,10 +56,12 @@ export function RangeLine({ range, ends, value, unit, label, onChange }: RangeLi
           />
         </div>
       </div>
-      <div className="flex justify-between">
-        <span>{ends[0]}</span>
-        <span>{ends[1]}</span>
-      </div>
+      {ends && (
+        <div className="flex justify-between">
+          <span>{ends[0]}</span>
+          <span>{ends[1]}</span>
+        </div>
+      )}
     </div>
   );
 }

@@ -1,4 +1,4 @@
-import { useState } from 'react';
+import { useRef, useState } from 'react';
 import type { BlockAction } from '@/components/ui/BlockActions';
 import { Button } from '@/components/ui/Button';
 import { Field, TextField } from '@/components/ui/Field';
@@ -26,6 +26,7 @@ interface MemberBlockProps {
 /** Whose the member is, where it stands, and saving it. */
 export function MemberBlock({ data, work }: MemberBlockProps) {
   const { job, mayEdit, template } = data;
+  const status = useRef<HTMLParagraphElement>(null);
   const { member, draft, isDirty, saving } = work;
   const why = reasonNotToSave(work, mayEdit);
   const isSaving = saving.kind === 'saving';
@@ -61,7 +62,7 @@ export function MemberBlock({ data, work }: MemberBlockProps) {
       >
         <div className="col-span-6 grid gap-10">
           {mayEdit && <Names work={work} />}
-          <p role="status" className="text-schedule">
+          <p ref={status} role="status" tabIndex={-1} className="text-schedule">
             {said(work)}
           </p>
           {member.fingerprint && (
@@ -70,7 +71,9 @@ export function MemberBlock({ data, work }: MemberBlockProps) {
               {member.engine_version}
             </p>
           )}
-          {mayEdit && member.status !== 'removed' && <RemoveMember work={work} />}
+          {mayEdit && member.status !== 'removed' && (
+            <RemoveMember work={work} onRemoved={() => status.current?.focus()} />
+          )}
           {member.status === 'removed' && <p className="text-schedule">Removed: {member.reason}</p>}
         </div>
       </TitleBlock>
@@ -127,7 +130,11 @@ function said({ saving, isDirty, member }: MemberBlockProps['work']): string {
   return `Saved as version ${member.version}, evaluated by the server.`;
 }
 
-function RemoveMember({ work }: Pick<MemberBlockProps, 'work'>) {
+interface RemoveProps extends Pick<MemberBlockProps, 'work'> {
+  readonly onRemoved: () => void;
+}
+
+function RemoveMember({ work, onRemoved }: RemoveProps) {
   const [reason, setReason] = useState('');
   return (
     <details>
@@ -143,7 +150,9 @@ function RemoveMember({ work }: Pick<MemberBlockProps, 'work'>) {
         <Button
           size="small"
           reason={reason.trim() === '' ? 'Say why first.' : undefined}
-          onClick={() => void work.save({ ...work.body, status: 'removed', reason: reason.trim() })}
+          onClick={async () => {
+            if (await work.save({ ...work.body, status: 'removed', reason: reason.trim() })) onRemoved();
+          }}
         >
           Remove
         </Button>

@@ -25,9 +25,10 @@ import type { WorkspaceData } from './workspace';
 
 const GROUPS = LOAD_GROUPS.map((group) => ({ group, name: LOAD_GROUP_NAMES[group] }));
 
-/** A figure on the drawing leads to its field. */
-function editField(symbol: string) {
-  const field = document.querySelector<HTMLInputElement>(`[data-symbol="${CSS.escape(symbol)}"] input`);
+/** A figure on the drawing leads to its field; null to the first. */
+function editField(symbol: string | null) {
+  const of = symbol === null ? '' : `="${CSS.escape(symbol)}"`;
+  const field = document.querySelector<HTMLInputElement>(`[data-symbol${of}] input`);
   field?.focus();
   field?.select();
 }
@@ -56,7 +57,15 @@ export function MemberSheet({ data }: { readonly data: WorkspaceData }) {
         }}
         onTakeTheirs={work.readAgain}
       />
-      {causes.length > 0 && <CauseNotice causes={causes} onPutBack={work.putBack} />}
+      {causes.length > 0 && (
+        <CauseNotice
+          causes={causes}
+          onPutBack={() => {
+            work.putBack();
+            editField(causes[0]?.symbol ?? null);
+          }}
+        />
+      )}
       <div className="flex flex-col max-md:flex-col-reverse">
         <Inputs data={data} work={work} />
         <ElevationZone

@@ -73,7 +73,10 @@ export function SectionSearch(props: SectionSearchProps) {
       <div className="grid flex-1 border-t-2 border-ink lg:grid-cols-[minmax(0,1fr)_414px_var(--title-column)] md:max-lg:grid-cols-[minmax(0,1fr)_var(--title-column)] [&>*]:border-ink [&>.zone]:border-t-0 lg:[&>*+*]:border-l md:max-lg:[&>:first-child]:col-span-2 md:max-lg:[&>:first-child]:border-b md:max-lg:[&>:last-child]:border-l max-md:[&>*+*]:border-t">
         <PinTray
           {...{ pinned, chosen, editions, system }}
-          onUnpinAll={() => setState((before) => ({ ...before, pins: [] }))}
+          onUnpinAll={() => {
+            setState((before) => ({ ...before, pins: [] }));
+            document.querySelector<HTMLElement>('[role="grid"]')?.focus({ preventScroll: true });
+          }}
         />
         <Comparison {...{ pinned, chosen, system }} />
         <EditionBlock

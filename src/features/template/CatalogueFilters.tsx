@@ -115,13 +115,23 @@ interface OneProps extends FiltersProps {
 /** A link to the catalogue with this filter on, or off where it is on. */
 function useFilter({ query, facet, value, onToggle }: OneProps) {
   const isOn = query[facet].some((one) => one === value);
+  const key = `${facet} ${value}`;
   const address = writeCatalogueQuery(toggled(query, facet, value));
   const onClick = (event: MouseEvent) => {
     if (event.metaKey || event.ctrlKey || event.shiftKey) return;
     event.preventDefault();
     onToggle(facet, value);
+    // A tag that is turned on or off may change its place.
+    requestAnimationFrame(() =>
+      document.querySelector<HTMLElement>(`[data-filter="${CSS.escape(key)}"]`)?.focus(),
+    );
   };
-  const link = { href: `?${address}`, onClick, 'aria-current': isOn ? ('true' as const) : undefined };
+  const link = {
+    href: `?${address}`,
+    onClick,
+    'data-filter': key,
+    'aria-current': isOn ? ('true' as const) : undefined,
+  };
   return { isOn, link };
 }
 

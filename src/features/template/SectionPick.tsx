@@ -22,7 +22,11 @@ export function SectionPick({ section, system, fault, onPick }: SectionPickProps
   const id = useId();
   const [text, setText] = useState('');
   const [message, setMessage] = useState<string | null>(fault);
+  const host = useRef<HTMLDivElement>(null);
   const { kit, found, wrong } = useSearch(text);
+  // What was pressed gives way to something else, which takes the focus.
+  const goTo = (part: 'select' | 'input') =>
+    requestAnimationFrame(() => host.current?.querySelector<HTMLElement>(part)?.focus());
   const take = (part: Kit, { table, values }: FoundSection, material?: string) => {
     const materials = part.materialsFor(values);
     const wanted = material ?? part.usualMaterial(values, table);
@@ -33,9 +37,10 @@ export function SectionPick({ section, system, fault, onPick }: SectionPickProps
     if (!pick.ok) return;
     onPick(pick.section);
     setText('');
+    goTo('select');
   };
   return (
-    <div className="relative min-w-0 px-14 pt-8 pb-9">
+    <div ref={host} className="relative min-w-0 px-14 pt-8 pb-9">
       <label htmlFor={id} className="block text-schedule text-ink-2">
         Section
       </label>
@@ -43,7 +48,10 @@ export function SectionPick({ section, system, fault, onPick }: SectionPickProps
         <Picked
           section={section}
           onMaterial={(material) => loadKit().then((part) => take(part, section, material))}
-          onClear={() => onPick(null)}
+          onClear={() => {
+            onPick(null);
+            goTo('input');
+          }}
         />
       ) : (
         <input
@@ -53,6 +61,7 @@ export function SectionPick({ section, system, fault, onPick }: SectionPickProps
           placeholder="W12x26, HEA 200 …"
           value={text}
           onChange={(event) => setText(event.target.value)}
+          onKeyDown={(event) => event.key === 'Escape' && setText('')}
           aria-describedby={`${id}-note`}
           className="input mt-2 min-h-37! pointer-coarse:min-h-44!"
         />

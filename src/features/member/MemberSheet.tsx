@@ -1,4 +1,5 @@
 import { Button } from '@/components/ui/Button';
+import { landOn } from '@/components/ui/landing';
 import { Notice } from '@/components/ui/Notice';
 import { SheetHead } from '@/components/ui/SheetHead';
 import { ZoneHeading } from '@/components/ui/ZoneHeading';
@@ -44,6 +45,10 @@ export function MemberSheet({ data }: { readonly data: WorkspaceData }) {
   const work = useMember(data);
   const { live } = work;
   const causes = toCauses(data.template, live.faults);
+  const readAgain = () => {
+    landOn('title-block');
+    work.readAgain();
+  };
   const system = data.job.unitSystem;
   return (
     <>
@@ -53,9 +58,9 @@ export function MemberSheet({ data }: { readonly data: WorkspaceData }) {
         saving={work.saving}
         body={work.body}
         onSettle={async (current, body) => {
-          if (await work.save(body, current.version)) work.readAgain();
+          if (await work.save(body, current.version)) readAgain();
         }}
-        onTakeTheirs={work.readAgain}
+        onTakeTheirs={readAgain}
       />
       {causes.length > 0 && (
         <CauseNotice

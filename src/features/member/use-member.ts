@@ -1,5 +1,4 @@
 import { useCallback, useEffect, useMemo, useRef, useState } from 'react';
-import { landOn } from '@/components/ui/landing';
 import type { FieldFaults } from '@/features/template/faults';
 import { fieldFaults } from '@/features/template/faults';
 import type { Fault } from '@/lib/app-error';
@@ -100,7 +99,6 @@ function useReadAgain(isDirty: boolean) {
   useUnsavedGuard(isDirty && !isLeaving);
   return () => {
     setLeaving(true);
-    landOn('title-block');
     setTimeout(() => location.reload());
   };
 }

@@ -28,5 +28,10 @@ describe('dimensions', () => {
     expect(nameDimension(DIMENSIONS.line_load)).toBe('a force per length');
     expect(nameDimension(DIMENSIONS.stress)).toBe('a force per area');
     expect(nameDimension(multiplyDimensions(DIMENSIONS.moment, DIMENSIONS.moment))).toBe('kg^2·m^4·s^-4');
+    const massTimesLength = multiplyDimensions(
+      DIMENSIONS.mass_per_length,
+      raiseDimension(DIMENSIONS.length, 2),
+    );
+    expect(nameDimension(massTimesLength)).toBe('kg·m');
   });
 });

@@ -18,6 +18,11 @@ import {
 
 const plain = (text: string) => text.replaceAll(/[\u00a0\u202f]/g, ' ');
 
+test('feet and inches are converted as feet', () => {
+  expect(toUnit(3.048, 'ft-in')).toBeCloseTo(10, 12);
+  expect(fromUnit(10, 'ft-in')).toBeCloseTo(3.048, 12);
+});
+
 test('what is no number is shown as a dash', () => {
   for (const nothing of [Number.NaN, Number.POSITIVE_INFINITY]) {
     expect([formatNumber(nothing), formatFeetInches(nothing), formatUtilisation(nothing)]).toEqual([

@@ -12,6 +12,11 @@ const refusal = (text: string, name: DimensionName, unit?: string) => {
   return reading.ok ? `read as ${reading.value}` : reading.code;
 };
 
+test('a quantity beyond every number is none', () => {
+  expect(refusal('1e308 km', 'length')).toBe('not_a_number');
+  expect(refusal('1e999 m', 'length')).toBe('not_a_number');
+});
+
 describe('a length', () => {
   test.each([
     ['7.2 m', 7.2],

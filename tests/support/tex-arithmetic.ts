@@ -146,6 +146,7 @@ const WITH_UNIT = /^(.*?)\\,\\mathrm\{((?:[^{}]|\{[^{}]*\})*)\}$/;
 export function recalculate(numbers: string, unit: string): { arithmetic: number; result: number | null } {
   const parts = numbers.split('=');
   const last = WITH_UNIT.exec(parts.at(-1) ?? '');
+  // A result of nothing is not written, nor is its unit.
   const factor = last ? factorBetween(unitIn(last[2] ?? ''), unit) : 1;
   const read = (text: string) => evaluateTex(WITH_UNIT.exec(text)?.[1] ?? text) * factor;
   return {

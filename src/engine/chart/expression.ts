@@ -100,11 +100,11 @@ export function expand(a: Expression): Expression {
 /** Whether it can be multiplied out: no sum stands in a denominator. */
 const isWhole = (a: Expression): boolean => a.every(({ factors }) => factors.every(({ power: p }) => p > 0));
 
-/** Multiplied out where that leaves fewer terms, else as it is. */
+/** Multiplied out where that leaves no more terms than there are, else as it is; one term stays one product. */
 export function simplest(a: Expression): Expression {
   const collected = add(a);
   const expanded = isWhole(collected) ? expand(collected) : collected;
-  return expanded.length < collected.length ? expanded : collected;
+  return collected.length > 1 && expanded.length <= collected.length ? expanded : collected;
 }
 
 /** The value, with the symbols' values. */

@@ -83,9 +83,25 @@ function risingTerm(w: Expression, a: Expression, span: Span): ChartTerm {
 
 function uniformTerms({ from, to, w0 }: Stretch, span: Span): ChartTerm[] {
   const { kind, length, setting } = span;
-  const isWhole = compare(from, ZERO, setting) === 0 && compare(to, length, setting) === 0;
-  if (kind === 'simple' && isWhole) return [spanTerm('uniform', { w: w0 }, span)];
-  return patchTerms(kind === 'simple' ? 'part-uniform' : 'uniform', 'w', { from, to, w0 }, span);
+  if (kind === 'guided') return patchTerms('uniform', 'w', { from, to, w0 }, span);
+  const isLeft = compare(from, ZERO, setting) === 0;
+  const isRight = compare(to, length, setting) === 0;
+  if (isLeft && isRight) return [spanTerm('uniform', { w: w0 }, span)];
+  if (isLeft || isRight) return patchTerms('part-uniform', 'w', { from, to, w0 }, span);
+  return withinTerms({ from, to, w0 }, span);
+}
+
+/** A uniform load that reaches neither support, as the difference whose formulas are the shortest where x is. */
+function withinTerms({ from, to, w0 }: Pick<Stretch, 'from' | 'to' | 'w0'>, span: Span): ChartTerm[] {
+  const { length, x, setting } = span;
+  const part = (w: Expression, a: Expression, seen: Span) => spanTerm('part-uniform', { w, a }, seen);
+  const seen = fromTheRight(span);
+  const [rest, beyond] = [from, to].map((end) => expand(subtract(length, end))) as [Expression, Expression];
+  const back = (terms: ChartTerm[]) => seenBack(terms, span);
+  if (compare(x, to, setting) >= 0) return [part(w0, to, span), part(negate(w0), from, span)];
+  if (compare(x, from, setting) <= 0) return back([part(w0, rest, seen), part(negate(w0), beyond, seen)]);
+  const whole = spanTerm('uniform', { w: w0 }, span);
+  return [whole, part(negate(w0), from, span), ...back([part(negate(w0), beyond, seen)])];
 }
 
 const curvatureTerms = (stretch: Stretch, span: Span): ChartTerm[] =>

@@ -22,7 +22,9 @@ import type { Unknown } from './unknown';
 export type ChartedPart = { cause: Cause; value: Expression; terms: ChartTerm[] };
 
 /** Why the beam moves: a load by its letter, or else. */
-export type Cause = { kind: 'load'; tex: string } | { kind: 'bending' | 'shear' | 'springs' | 'movements' };
+export type Cause =
+  | { kind: 'load'; tex: string }
+  | { kind: 'loads' | 'ends' | 'bending' | 'shear' | 'springs' | 'movements' };
 
 /** The movement of a piece at a place, down or clockwise; null where no case covers it. */
 type TermsAt = (piece: Piece, place: Expression, movement: Movement) => ChartTerm[] | null;

@@ -1,5 +1,5 @@
 import { formatNumber } from '../quantity/index';
-import { numberTex, toTex } from './symbols';
+import { AS_GIVEN, numberTex, toTex } from './symbols';
 import { inUnit, unitTex } from './units';
 
 /** Figures of a result, and of the numbers it is shown to come from unless they need more. */
@@ -32,9 +32,9 @@ function shown(found: number, reference: number, figures: number): string {
   return formatNumber(Math.abs(value) < 0.5 * 10 ** -places ? 0 : value, { places });
 }
 
-/** A value as it was given, with its unit, for maths mode. */
+/** A value as it was given, without what a change of units leaves of it; with its unit, for maths mode. */
 export const given = (si: number, unit: string): string =>
-  `${numberTex(inUnit(si, unit))}\\,${unitTex(unit)}`;
+  `${numberTex(Number(inUnit(si, unit).toPrecision(AS_GIVEN)))}\\,${unitTex(unit)}`;
 
 /** A place along the beam, in words. */
 export function placeWords(x: number, unit: string): string {

@@ -13,6 +13,7 @@ import {
   symbol,
 } from '../chart/index';
 import { evaluate } from '../polynomial/index';
+import type { Cause } from './charted';
 import { fromChart, type MovementPart } from './movement';
 import { type NamedBeam, type NamedSupport, settlementOf, springOf } from './named-beam';
 import { partOn, stiffnessBetween } from './pieces';
@@ -40,22 +41,38 @@ export function finalDeflection(
   const released = { kind: 'simple', left: span.left.at, right: span.right.at } as const;
   const setting = beam.setting(stiffness.ei);
   const loads = loadsOnSpan(beam, span);
-  const bending = [...loads, ...moments].map((load) =>
-    chartTerms(released, load, place, 'deflection', setting),
-  );
-  if (!bending.every((terms) => terms !== null)) return null;
+  const under = (some: readonly NamedLoad[]) =>
+    some.map((load) => chartTerms(released, load, place, 'deflection', setting));
+  const [byLoads, byMoments] = [under(loads), under(moments)];
+  if (![...byLoads, ...byMoments].every((terms) => terms !== null)) return null;
   const { ga } = stiffness;
-  const terms: ChartTerm[] = [
-    ...bending.flat(),
-    ...movementTerms(released, movementsOf(span), place, 'deflection', setting),
-    ...(ga ? shearTerms(released, [...loads, ...moments], place, 'deflection', setting, ga) : []),
+  const causes: [Cause, ChartTerm[]][] = [
+    [{ kind: 'loads' }, byLoads.flatMap((terms) => terms ?? [])],
+    [{ kind: 'ends' }, byMoments.flatMap((terms) => terms ?? [])],
+    [{ kind: 'movements' }, movementTerms(released, movementsOf(span), place, 'deflection', setting)],
+    [
+      { kind: 'shear' },
+      ga ? shearTerms(released, [...loads, ...moments], place, 'deflection', setting, ga) : [],
+    ],
   ];
-  const value = terms.flatMap((term) => term.value);
-  const part = fromChart(beam.letters, { cause: { kind: 'bending' }, value, terms });
-  const ends =
-    moments.length === 0 ? '' : ` and the ${moments.length > 1 ? 'moments' : 'moment'} at its ends`;
-  const how = `: ${span.left.letter}–${span.right.letter} as a simple span under its loads${ends.replace('ends', moments.length > 1 ? 'ends' : 'end')}`;
-  return { parts: [part], how };
+  const parts = causes.flatMap(([cause, terms]) => {
+    const value = terms.flatMap((term) => term.value);
+    return value.length === 0 ? [] : [fromChart(beam.letters, { cause, value, terms })];
+  });
+  const ends = ['', ' and the moment at its end', ' and the moments at its ends'][moments.length];
+  const how = `: ${span.left.letter}–${span.right.letter} as a simple span under its loads${ends}`;
+  return { parts: together(parts), how };
+}
+
+/** Up to so many terms are read at once; more, part by part. */
+const AT_ONCE = 3;
+
+function together(parts: readonly MovementPart[]): MovementPart[] {
+  const charted = parts.filter((part) => 'expression' in part);
+  const expression = charted.flatMap((part) => part.expression);
+  if (expression.length === 0 || expression.length > AT_ONCE) return [...parts];
+  const value = charted.reduce((sum, part) => sum + part.value, 0);
+  return [{ cause: { kind: 'loads' }, value, expression, terms: charted.flatMap(({ terms }) => terms) }];
 }
 
 /** Between the supports on either side; at the ends of the beam with the overhang there. */

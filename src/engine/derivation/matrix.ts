@@ -23,7 +23,7 @@ export function matrixStep({ beam, unknowns }: Worked, system: System): Derivati
   const letters = matrix(system.coefficients.map((row) => row.map((tex) => tex ?? '0')));
   return {
     id: 'matrix',
-    title: 'Flexibility matrix: its diagonal is positive, and f over the diagonal is f below it',
+    title: 'Flexibility matrix: positive on its diagonal, symmetric by reciprocity',
     symbols: `\\mathbf{F}=${isPrinted ? letters : '\\left[f_{ij}\\right]'}`,
     numbers: isPrinted ? matrix(numbersOf(system).coefficients.map((row) => row.map(signed))) : '',
     ...listing,

@@ -39,6 +39,18 @@ export function expressionOf(parts: readonly MovementPart[]): Expression | null 
   return parts.flatMap(({ expression }) => expression);
 }
 
+/** Closed forms may differ from the exact value by rounding alone. */
+const SAME = 1e-9;
+
+/** Whether the parts come to the value; what does not is not shown as a formula. */
+export function addUpTo(letters: Letters, parts: readonly MovementPart[], value: number): boolean {
+  const sizes = parts.map((part) =>
+    'expression' in part ? letters.largest(part.expression) : Math.abs(part.value),
+  );
+  const total = parts.reduce((sum, part) => sum + part.value, 0);
+  return Math.abs(total - value) <= SAME * Math.max(Math.abs(value), ...sizes);
+}
+
 /** Where a movement is found, without its parts. */
 export type Found = Pick<Frame, 'id' | 'left' | 'kind' | 'extra'> & {
   title: string;

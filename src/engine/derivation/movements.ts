@@ -1,5 +1,5 @@
 import { type ChartedPart, chartedFlexibility, chartedGap } from './charted';
-import { fromChart, fromWork, type MovementPart } from './movement';
+import { addUpTo, fromChart, fromWork, type MovementPart } from './movement';
 import { type Piece, piecesOf } from './pieces';
 import type { Kind } from './units';
 import { moves, type Unknown } from './unknown';
@@ -13,9 +13,6 @@ export type Movements = {
   flexibility: (i: number, j: number) => MovementPart[];
 };
 
-/** Closed forms may differ from the exact integrals by rounding alone; anything more is not shown as a formula. */
-const SAME = 1e-9;
-
 export function movementsOf(worked: Worked): Movements {
   const { beam, unknowns, gaps, flexibility } = worked;
   const pieces = piecesOf(beam, unknowns);
@@ -28,12 +25,12 @@ export function movementsOf(worked: Worked): Movements {
       const parts = found?.flatMap(([tex, part]) =>
         part ? [fromChart(beam.letters, part)] : alone(worked, states(), at, tex),
       );
-      return parts && isSame(worked, parts, gaps[i]!) ? parts : underLoads(worked, states(), at);
+      return parts && addUpTo(beam.letters, parts, gaps[i]!) ? parts : underLoads(worked, states(), at);
     },
     flexibility: (i, j) => {
       const found = pieces && chartedFlexibility(beam, pieces, unknowns[i]!, unknowns[j]!);
       const parts = found?.map((part: ChartedPart) => fromChart(beam.letters, part));
-      return parts && isSame(worked, parts, flexibility[i]![j]!)
+      return parts && addUpTo(beam.letters, parts, flexibility[i]![j]!)
         ? parts
         : underUnit(worked, states(), unknowns[i]!, unknowns[j]!);
     },
@@ -46,14 +43,6 @@ function lazily<T>(make: () => T): () => T {
     made ??= { value: make() };
     return made.value;
   };
-}
-
-function isSame({ beam }: Worked, parts: readonly MovementPart[], want: number): boolean {
-  const sizes = parts.map((part) =>
-    'expression' in part ? beam.letters.largest(part.expression) : Math.abs(part.value),
-  );
-  const total = parts.reduce((sum, { value }) => sum + value, 0);
-  return Math.abs(total - want) <= SAME * Math.max(Math.abs(want), ...sizes);
 }
 
 export const gapKind = (unknown: Unknown): Kind => moves(unknown);

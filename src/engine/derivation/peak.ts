@@ -1,16 +1,25 @@
-import { divide, type Expression, expandable, negate, powerOf, texOf } from '../chart/index';
+import {
+  divide,
+  type Expression,
+  evaluate,
+  expandable,
+  multiply,
+  negate,
+  oriented,
+  power,
+  powerOf,
+  symbolsOf,
+  texOf,
+} from '../chart/index';
 import { placeWords } from './display';
 import type { NamedBeam } from './named-beam';
+import { placeOf, placeTex } from './spot';
 import { momentAt } from './statics';
-import { calculate, withResult, written } from './step';
+import { calculate, type Frame, withResult, written } from './step';
 import { numberTex } from './symbols';
 import type { DerivationStep } from './types';
 import { inUnit } from './units';
 import type { Worked } from './values';
-
-/** A place as it stands within brackets or below the line. */
-export const placeTex = (beam: NamedBeam, place: Expression): string =>
-  texOf(place, beam.letters.symbols()).replaceAll('\\dfrac', '\\tfrac');
 
 const PEAK = 'x_m';
 
@@ -22,12 +31,11 @@ export function peakSteps(worked: Worked): DerivationStep[] {
   const isPlain = !beam.beam.hinges.includes(x) && !beam.supports.some((s) => s.x === x);
   if (value <= 0 || x === 0 || x === beam.beam.length || !isPlain) return [];
   if (beam.groups.some(({ numeric }) => numeric.kind === 'couple' && numeric.at === x)) return [];
-  const known = beam.places.find(x);
-  const place = known ?? beam.places.give(x, beam.letters.define(PEAK, x, 'length'));
+  const place = placeOf(beam, x, PEAK);
   const moment = momentAt(beam, worked.parts, { x, at: place });
   const { letters } = beam;
   return [
-    ...(known ? [] : zeroShear(beam, moment, x)),
+    ...(letters.has(PEAK) ? zeroShear(beam, moment, x) : []),
     calculate(letters, {
       id: 'largest-moment',
       title: `Largest sagging moment, ${placeWords(x, letters.units.of('length', 'base'))}`,
@@ -47,24 +55,11 @@ function zeroShear(beam: NamedBeam, moment: Expression, x: number): DerivationSt
   const { letters } = beam;
   const shear = [1, 2, 3].map((p) => powerOf(expanded, PEAK, p, p));
   const [constant, linear, square] = shear as [Expression, Expression, Expression];
-  const frame = { kind: 'length', scale: 'base' } as const;
-  const common = {
-    id: 'zero-shear',
-    title: 'There the shear is zero',
-    figure: { structure: 'built' } as const,
-  };
+  const common = { id: 'zero-shear', title: 'Where the shear is zero, and the moment largest' };
+  const frame: Frame = { ...common, left: PEAK, kind: 'length', scale: 'base' };
   if (square.length === 0)
-    return [
-      calculate(letters, {
-        ...frame,
-        id: common.id,
-        title: common.title,
-        left: PEAK,
-        expression: divide(negate(constant), linear),
-        value: x,
-        extra: { figure: common.figure },
-      }),
-    ];
+    return [calculate(letters, { ...frame, expression: rootOf(beam, constant, linear), value: x })];
+  if (linear.length === 0) return [squareRoot(beam, frame, negate(divide(constant, square)), x)];
   const symbols = shearTex(beam, shear);
   const root = quadratic(beam, shear, x);
   const { unit, shown, numbers, result } = written(letters, frame, { value: x, largest: x, ...root });
@@ -78,6 +73,36 @@ function zeroShear(beam: NamedBeam, moment: Expression, x: number): DerivationSt
       display: shown,
     },
   ];
+}
+
+/** −c₁/2c₂: term by term where the load cancels in one of them, else as one fraction. */
+function rootOf({ letters }: NamedBeam, constant: Expression, linear: Expression): Expression {
+  const apart = divide(negate(constant), linear);
+  const below = symbolsOf(linear);
+  const isShared = apart.every(({ powers }) => below.every((name) => (powers.get(name) ?? 0) < 0));
+  if (isShared || linear.length > 1) return multiply(negate(constant), power(linear, -1));
+  return apart.toSorted((a, b) => Math.sign(letters.of([b])) - Math.sign(letters.of([a])));
+}
+
+/** x_m = √… where the load rises from nothing. */
+function squareRoot({ letters }: NamedBeam, frame: Frame, inside: Expression, x: number): DerivationStep {
+  const ordered = oriented(inside, letters.value);
+  const root = (tex: string) => `\\sqrt{${tex}}`;
+  const { unit, shown, numbers, result } = written(letters, frame, {
+    value: x,
+    largest: x,
+    total: (figures) => Math.sqrt(evaluate(ordered, (tex) => letters.shown(tex, 'base', figures))),
+    tex: (figures) => root(texOf(ordered, letters.numbers('base', figures))),
+  });
+  return {
+    id: frame.id,
+    title: frame.title,
+    symbols: `${PEAK}=${root(texOf(ordered, letters.symbols()))}`,
+    numbers: withResult(letters, frame, numbers, result),
+    value: x,
+    unit,
+    display: shown,
+  };
 }
 
 /** The shear as the sum that is set to zero. */
@@ -117,6 +142,5 @@ function quadratic({ letters }: NamedBeam, shear: readonly Expression[], x: numb
 function rootTex([c, b, a]: readonly [number, number, number], sign: 1 | -1): string {
   const plain = (n: number) => (n < 0 ? `-${numberTex(-n)}` : numberTex(n));
   const bracket = (n: number) => (n < 0 ? `(${plain(n)})` : plain(n));
-  if (b === 0) return `\\sqrt{\\dfrac{${numberTex(Math.abs(c))}}{${numberTex(Math.abs(a))}}}`;
   return `\\dfrac{${plain(-b)}${sign < 0 ? '-' : '+'}\\sqrt{${bracket(b)}^2-4\\times${bracket(a)}\\times${bracket(c)}}}{2\\times${bracket(a)}}`;
 }

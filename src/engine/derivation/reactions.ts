@@ -2,7 +2,7 @@ import { add, type Expression, negate, ZERO } from '../chart/index';
 import { evaluate } from '../polynomial/index';
 import { placeWords } from './display';
 import type { NamedBeam, NamedSupport } from './named-beam';
-import { placeTex } from './peak';
+import { placeTex } from './spot';
 import { type Equilibrium, equilibrium, momentAt } from './statics';
 import { calculate } from './step';
 import type { DerivationStep } from './types';

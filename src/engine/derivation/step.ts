@@ -1,8 +1,8 @@
-import { type ChartCase, type Expression, evaluate, oriented, texOf } from '../chart/index';
+import { add, type ChartCase, type Expression, evaluate, oriented, texOf } from '../chart/index';
 import { display, FIGURES, withUnit } from './display';
 import type { Letters } from './symbols';
 import type { ChartUse, DerivationStep } from './types';
-import { type Kind, type Scale, toSi } from './units';
+import { type Kind, type Scale, toSi, unitTex } from './units';
 
 const MOST_FIGURES = 10;
 
@@ -25,14 +25,19 @@ export type Calculation = Frame & {
   symbols?: string;
   /** Where it is known better than the expression gives it. */
   value?: number;
+  /** Written in the order it has, as a rule of solution reads; else what is positive comes first. */
+  isRule?: true;
 };
 
 export function calculate(letters: Letters, calculation: Calculation): DerivationStep {
-  const { symbols, value } = calculation;
-  const expression = oriented(calculation.expression, letters.value);
+  const { symbols, value, isRule } = calculation;
+  const given = isRule ? calculation.expression : oriented(calculation.expression, letters.value);
+  const expression = add(given);
   const { unit, shown, numbers, result } = arithmetic(letters, calculation, expression, value);
   const { id, title, left, extra } = calculation;
-  const right = symbols ?? texOf(expression, letters.symbols());
+  const tex = (terms: Expression) => texOf(terms, letters.symbols());
+  const right =
+    symbols ?? (expression.length < given.length ? `${tex(given)}=${tex(expression)}` : tex(given));
   return {
     id,
     title,
@@ -91,14 +96,20 @@ export function written(
   return { unit, shown, result, numbers: figures === null ? result : tex(figures) };
 }
 
-/** Numbers whose result is displayed in another unit end in it. */
+/** A number by itself, with nothing to work out. */
+const isPlain = (tex: string): boolean => /^-?\d[\d.]*(?:\\,\d{3})*(?:\.\d+)?$/.test(tex);
+
+/** Numbers whose result is displayed in another unit end in it, unless it is nothing. */
 export function withResult(
   { units }: Letters,
   { kind, scale }: Pick<Frame, 'kind' | 'scale'>,
   numbers: string,
   result: string,
 ): string {
-  const isDone = numbers === '' || numbers === result || units.of(kind, scale) === units.shown(kind);
+  const isNothing = !/[1-9]/.test(result.replace(/\\mathrm.*$/, ''));
+  const isDone =
+    numbers === '' || numbers === result || isNothing || units.of(kind, scale) === units.shown(kind);
+  if (isPlain(numbers) && !isNothing) return `${numbers}\\,${unitTex(units.of(kind, scale))}`;
   return isDone ? numbers : `${numbers}=${result}`;
 }
 

@@ -9,7 +9,7 @@ type Role = 'given' | 'drawn' | 'found';
 export type Letter = { tex: string; value: number; kind: Kind; role: Role };
 
 /** A given number of no more figures than this is written in full. */
-const AS_GIVEN = 6;
+export const AS_GIVEN = 6;
 /** Else to so many at least. */
 const ROUNDED = 5;
 /** What a change of units leaves of an exact number. */

@@ -55,7 +55,8 @@ function byDeterminants(system: System, unknown: Unknown, i: number): Derivation
   return calculate(system.letters, {
     ...found(system, unknown, i),
     title: `${nameForce(unknown)}, from the ${isApart ? 'equation' : 'two equations'}`,
-    expression: isApart ? divide(own, c(i, i)) : multiply(top, power(bottom, -1)),
+    expression: multiply(isApart ? own : top, power(isApart ? c(i, i) : bottom, -1)),
+    isRule: true,
   });
 }
 
@@ -77,7 +78,8 @@ function byElimination(system: System): DerivationStep[] {
       calculate(system.letters, {
         ...found(system, system.unknowns[i]!, i),
         title: `${nameForce(system.unknowns[i]!)}, from equation ${i + 1}`,
-        expression: divide(right, letter(left, i, i)),
+        expression: multiply(right, power(letter(left, i, i), -1)),
+        isRule: true,
       }),
     );
   }
@@ -96,19 +98,21 @@ function eliminate(system: System, k: number): { step: DerivationStep | null; re
   for (let i = k + 1; i < unknowns.length; i++) {
     if (coefficients[i]![k] === null) continue;
     for (let j = k + 1; j < unknowns.length; j++) {
+      if (coefficients[k]![j] === null) continue;
       const value = reduce(letter(system, i, j), letter(system, k, j), i);
-      if (value.length === 0) continue;
       const kind = coefficientKind(letters, system, i, j);
       coefficients[i]![j] = newLetter(
         letters,
-        system.coefficients[i]![j] ?? `c_{${i + 1}${j + 1}}`,
+        system.coefficients[i]![j] ?? `f_{${unknowns[i]!.index}${unknowns[j]!.index}}`,
         value,
         kind,
         lines,
       );
     }
     const kind = kinds[i]!;
-    rights[i] = symbol(newLetter(letters, `d_{${i + 1}}`, reduce(rights[i]!, rights[k]!, i), kind, lines));
+    rights[i] = symbol(
+      newLetter(letters, `d_{${unknowns[i]!.index}}`, reduce(rights[i]!, rights[k]!, i), kind, lines),
+    );
     coefficients[i]![k] = null;
   }
   const reduced = { ...system, coefficients, rights };

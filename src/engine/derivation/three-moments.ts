@@ -7,6 +7,7 @@ import {
   expand,
   multiply,
   negate,
+  power,
   simplest,
   subtract,
   symbol,
@@ -23,7 +24,7 @@ import { aligned, equationsTex, type System, solutionSteps } from './system';
 import type { DerivationStep } from './types';
 import type { Unknown } from './unknown';
 import type { Worked } from './values';
-import { negativeNote } from './words';
+import { listed, negativeNote } from './words';
 
 /** A span between two supports of a continuous beam. */
 type Span = { left: NamedSupport; right: NamedSupport; length: Expression; ei: Expression };
@@ -91,32 +92,39 @@ function loadTerm(beam: NamedBeam, { left, right, ei }: Span, end: 'left' | 'rig
   return { tex: `K_{${at.letter}${other.letter}}`, value: terms.flatMap(({ value }) => value), terms };
 }
 
-/** One step for each load term that counts: at the inner supports. Defines their letters. */
+/** One step for load terms of one formula, at the inner supports. Defines their letters. */
 function loadSteps(
   beam: NamedBeam,
   spans: readonly Span[],
   loads: readonly (readonly [LoadTerm, LoadTerm])[],
 ): DerivationStep[] {
-  return spans.flatMap(({ left, right }, k) => {
-    const ends = [
-      { at: left, term: loads[k]![0], isInner: k > 0 },
-      { at: right, term: loads[k]![1], isInner: k < spans.length - 1 },
-    ];
-    return ends.flatMap(({ at, term, isInner }) => {
-      if (!isInner || term.value.length === 0) return [];
-      const charts = chartsOf(term.terms);
-      const step = calculate(beam.letters, {
-        id: `load-term-${term.tex.replaceAll(/[^A-Z]/g, '')}`,
-        title: `Load term of span ${left.letter}–${right.letter} at ${at.letter}: 6EI times its slope there under its own load`,
-        left: term.tex,
-        expression: term.value,
-        kind: 'load term',
-        scale: 'base',
-        extra: { charts, figure: { structure: 'released' } },
-      });
-      beam.letters.define(term.tex, beam.letters.of(term.value), 'load term');
-      return [step];
+  const { letters } = beam;
+  const alike = new Map<string, { spans: Set<string>; terms: LoadTerm[] }>();
+  spans.forEach(({ left, right }, k) => {
+    loads[k]!.forEach((term, end) => {
+      const isInner = end === 0 ? k > 0 : k < spans.length - 1;
+      if (!isInner || term.value.length === 0) return;
+      const formula = texOf(term.value, letters.symbols());
+      const known = alike.get(formula) ?? { spans: new Set(), terms: [] };
+      known.spans.add(`${left.letter}–${right.letter}`);
+      known.terms.push(term);
+      alike.set(formula, known);
     });
+  });
+  return [...alike.values()].map(({ spans: names, terms }) => {
+    const [first] = terms as [LoadTerm];
+    const isOne = terms.length === 1;
+    const step = calculate(letters, {
+      id: `load-term-${first.tex.replaceAll(/[^A-Z]/g, '')}`,
+      title: `${isOne ? 'Load term' : 'Load terms'} of ${listed([...names])}: 6EI times the slope of ${isOne ? 'its end there' : 'the ends'} under ${names.size === 1 ? 'its' : 'their'} own load`,
+      left: terms.map(({ tex }) => tex).join('='),
+      expression: first.value,
+      kind: 'load term',
+      scale: 'base',
+      extra: { charts: chartsOf(first.terms), figure: { structure: 'released' } },
+    });
+    for (const { tex, value } of terms) letters.define(tex, letters.of(value), 'load term');
+    return step;
   });
 }
 
@@ -198,7 +206,15 @@ function settlements(before: Span, after: Span): Expression {
   return turns.flatMap((term) => multiply([term], multiply(constant(6), before.ei)));
 }
 
-const rowTex = (beam: NamedBeam, { left, right }: Row): string => {
+/** The right side with the moments that are known already. */
+const onTheRight = ({ left, right }: Row): Expression => {
+  const known = left.filter(({ isKnown }) => isKnown);
+  return [...right, ...known.flatMap(({ tex, factor }) => negate(multiply(symbol(tex), factor)))];
+};
+
+const rightTex = ({ letter }: Unknown): string => `d_{${letter}}`;
+
+const rowTex = (beam: NamedBeam, left: Row['left'], right: Expression): string => {
   const letters = beam.letters.symbols();
   const sides = left.map(({ tex, factor }) => texOf(multiply(factor, symbol(tex)), letters));
   return `${sides.join('+')}=${texOf(right, letters)}`;
@@ -211,8 +227,7 @@ function one(worked: Worked, row: Row): DerivationStep[] {
   const { beam, unknowns, values } = worked;
   const unknown = unknowns[0]!;
   const own = row.left.find(({ isKnown }) => !isKnown)!;
-  const known = row.left.filter(({ isKnown }) => isKnown);
-  const right = [...row.right, ...known.flatMap(({ tex, factor }) => negate(multiply(symbol(tex), factor)))];
+  const right = onTheRight(row);
   const common = { left: unknown.tex, value: values[0]!, kind: 'moment', scale: 'base' } as const;
   const closed = simplest(divide(row.closed, own.factor));
   return [
@@ -220,8 +235,9 @@ function one(worked: Worked, row: Row): DerivationStep[] {
       ...common,
       id: 'compatibility',
       title: `${TITLE} of ${unknown.letter} are the same`,
-      left: `${rowTex(beam, row)}\\quad\\Rightarrow\\quad ${unknown.tex}`,
-      expression: divide(right, own.factor),
+      left: `${rowTex(beam, row.left, row.right)}\\quad\\Rightarrow\\quad ${unknown.tex}`,
+      expression: multiply(right, power(own.factor, -1)),
+      isRule: true,
       extra: {
         key: true,
         figure: { structure: 'built' },
@@ -249,11 +265,10 @@ function several(worked: Worked, rows: readonly Row[]): DerivationStep[] {
       return { tex, factor: term.factor };
     }),
   );
-  const rights = rows.map(({ left, right }, i) => {
-    const known = left.filter(({ isKnown }) => isKnown);
-    const whole = [...right, ...known.flatMap(({ tex, factor }) => negate(multiply(symbol(tex), factor)))];
-    return letters.define(`d_{${unknowns[i]!.letter}}`, letters.of(whole), 'load term');
-  });
+  const wholes = rows.map(onTheRight);
+  const rights = wholes.map((whole, i) =>
+    whole.length === 0 ? [] : letters.define(rightTex(unknowns[i]!), letters.of(whole), 'load term'),
+  );
   const system: System = {
     letters,
     unknowns,
@@ -267,7 +282,17 @@ function several(worked: Worked, rows: readonly Row[]): DerivationStep[] {
     {
       id: 'compatibility',
       title: `${TITLE} of each inner support are the same`,
-      symbols: aligned(rows.map((row) => rowTex(beam, row).replace('=', '&='))),
+      symbols: aligned(
+        rows.map(({ left }, i) => {
+          const right = wholes[i]!;
+          const equation = rowTex(
+            beam,
+            left.filter(({ isKnown }) => !isKnown),
+            right,
+          ).replace('=', '&=');
+          return right.length === 0 ? equation : `${equation}=${rightTex(unknowns[i]!)}`;
+        }),
+      ),
       numbers: equationsTex(system),
       value: null,
       unit: '',

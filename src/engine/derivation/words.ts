@@ -66,11 +66,15 @@ export function gapTitle(unknown: Unknown, count: number, pieces: readonly Piece
   return `${nameMovement(unknown)} of the ${nameReleased(pieces)}, ${release}`;
 }
 
-/** "under w", "as the supports move", "as the springs give", "by shear" */
+/** "under w", "as supports move", "by springs", "by shear" */
 export function causeWords(cause: Cause | { kind: 'curvature' }): string {
   switch (cause.kind) {
     case 'load':
       return `under ${plainLetter(cause.tex)}`;
+    case 'loads':
+      return 'under the loads';
+    case 'ends':
+      return 'by the end moments';
     case 'bending':
       return 'by bending';
     case 'curvature':
@@ -78,9 +82,9 @@ export function causeWords(cause: Cause | { kind: 'curvature' }): string {
     case 'shear':
       return 'by shear';
     case 'springs':
-      return 'as the springs give';
+      return 'by springs';
     case 'movements':
-      return 'as the supports move';
+      return 'as supports move';
   }
 }
 
@@ -89,6 +93,10 @@ export function causeTex(cause: Cause | { kind: 'curvature' }): string {
   switch (cause.kind) {
     case 'load':
       return cause.tex;
+    case 'loads':
+      return '\\mathrm{p}';
+    case 'ends':
+      return '\\mathrm{m}';
     case 'bending':
       return '\\mathrm{b}';
     case 'curvature':

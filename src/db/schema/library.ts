@@ -64,10 +64,15 @@ export const revision = pgTable(
     version: integer().notNull().default(1),
     authorId: uuid().notNull(),
     reviewerId: uuid(),
+    /** Who changed the draft besides its author. */
+    editorIds: uuid().array().notNull().default([]),
     changeNote: text().notNull().default(''),
-    changeClass: text({ enum: CHANGE_CLASSES }).notNull(),
-    consequence: text({ enum: CONSEQUENCES }).notNull(),
+    /** Null while a draft does not say. */
+    changeClass: text({ enum: CHANGE_CLASSES }),
+    consequence: text({ enum: CONSEQUENCES }),
     createdAt: now(),
+    /** A draft that nobody goes on with; saving it takes it up again. */
+    abandonedAt: moment(),
     submittedAt: moment(),
     issuedAt: moment(),
     supersededAt: moment(),
@@ -94,8 +99,13 @@ export const revision = pgTable(
     check('revision_consequence', oneOf(table.consequence, CONSEQUENCES)),
     check(
       'revision_not_issued_by_author',
-      sql`${table.state} in ('draft', 'in_review') or (${table.reviewerId} is not null and ${table.reviewerId} <> ${table.authorId})`,
+      sql`${table.state} in ('draft', 'in_review') or (${table.reviewerId} is not null and ${table.reviewerId} <> ${table.authorId} and ${table.reviewerId} <> all (${table.editorIds}))`,
     ),
+    check(
+      'revision_classed',
+      sql`${table.state} = 'draft' or (${table.changeClass} is not null and ${table.consequence} is not null)`,
+    ),
+    check('revision_abandoned_draft', sql`${table.abandonedAt} is null or ${table.state} = 'draft'`),
     check(
       'revision_issued_with_note',
       sql`${table.state} in ('draft', 'in_review') or length(trim(${table.changeNote})) > 0`,

@@ -16,7 +16,7 @@ import {
 import type { InfluenceQuantity, Side } from './types';
 
 /** The largest or smallest moment that a train brings about anywhere: also the section where it does, null for none. */
-export type AbsoluteMoment = TrainExtreme & { section: number | null };
+export type AbsoluteMoment = Omit<TrainExtreme, 'ordinates'> & { section: number | null };
 
 /** A stretch between neighbouring supports or ends, with the influence lines of the moments just inside its two ends. */
 type Panel = { from: number; to: number; left: Piecewise; right: Piecewise };
@@ -50,8 +50,8 @@ export function absoluteMoment(
   const atJoints = joints.flatMap(({ at, left, right }) =>
     [...new Set([left, right])].map((line) => ({ section: at, ...worstTrain(line, wheels, directions) })),
   );
-  const max: AbsoluteMoment[] = atJoints.map(({ section, max: most }) => ({ ...most, section }));
-  const min: AbsoluteMoment[] = atJoints.map(({ section, min: least }) => ({ ...least, section }));
+  const max = atJoints.map(({ section, max: most }) => atSection(most, section));
+  const min = atJoints.map(({ section, min: least }) => atSection(least, section));
   for (const direction of directions) {
     for (const panel of panelsBetween(joints)) max.push(...underWheels(panel, wheels, direction));
   }
@@ -61,6 +61,14 @@ export function absoluteMoment(
     proof: worstOf(proofs),
   };
 }
+
+const atSection = ({ value, direction, at, wheels }: TrainExtreme, section: number): AbsoluteMoment => ({
+  value,
+  direction,
+  at,
+  wheels,
+  section,
+});
 
 /** Where no position of the train makes a moment of that sign there is no section either. */
 const known = (found: AbsoluteMoment): AbsoluteMoment =>

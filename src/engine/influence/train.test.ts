@@ -164,7 +164,13 @@ describe('worstTrain', () => {
   test('of one wheel is the extreme of the line', () => {
     const { line, extremes } = influenceLine(overhang, { kind: 'moment', at: 2, side: 'right' });
     const { max, min } = worstTrain(line, [{ offset: 0, force: 5 }], ['right']);
-    expect(max).toEqual({ value: 5 * extremes.max.value, direction: 'right', at: [2], wheels: [2] });
+    expect(max).toEqual({
+      value: 5 * extremes.max.value,
+      direction: 'right',
+      at: [2],
+      wheels: [2],
+      ordinates: [extremes.max.value],
+    });
     expect(min.value).toBeCloseTo(5 * extremes.min.value, 12);
     expect(min.wheels).toEqual([10]);
   });
@@ -208,6 +214,7 @@ describe('worstTrain', () => {
       direction: 'right',
       at: [],
       wheels: [null],
+      ordinates: [null],
     });
   });
 
@@ -221,6 +228,7 @@ describe('worstTrain', () => {
     const { min } = worstTrain(line, wheels, ['right']);
     expect(min.value).toBeCloseTo(-3 / 6 - 4 / 6, 12);
     expect(min.wheels).toEqual([10, 3]);
+    expect(min.ordinates).toEqual([expect.closeTo(-4 / 6, 12), expect.closeTo(-3 / 6, 12)]);
   });
 
   test('leaves out a wheel that has just gone off, where that is the worst', () => {

@@ -16,6 +16,8 @@ export type TrainExtreme = {
   direction: Direction;
   at: number[];
   wheels: (number | null)[];
+  /** Of the line under each wheel, on the side that counts; null off the beam. The value is Σ force · ordinate. */
+  ordinates: (number | null)[];
 };
 
 /** Places of the front nearer than this part of the train's way are one. */
@@ -115,11 +117,13 @@ function placed(
   const { value, at } = worst(found, sense);
   const [front] = at;
   if (front === undefined || sense * value <= 0) {
-    return { value: 0, direction, at: [], wheels: wheels.map(() => null) };
+    const off = wheels.map(() => null);
+    return { value: 0, direction, at: [], wheels: off, ordinates: off };
   }
   const stands = standings(line, wheels, direction, front);
   const held = stands.find((one) => !isWorse(one.value, value, 1) && !isWorse(one.value, value, -1));
-  return { value, direction, at, wheels: (held ?? stands[0]!).wheels };
+  const { wheels: places, ordinates } = held ?? stands[0]!;
+  return { value, direction, at, wheels: places, ordinates };
 }
 
 const isWorse = (a: number, b: number, sense: 1 | -1): boolean =>
@@ -142,7 +146,7 @@ function jumpMeetings(line: Piecewise, wheels: readonly Wheel[], direction: Dire
   );
 }
 
-type Standing = { value: number; wheels: (number | null)[] };
+type Standing = Pick<TrainExtreme, 'value' | 'wheels' | 'ordinates'>;
 
 /** The train with its front at a place: standing there, a wheel at a jump counted at its left or right; a hair before it, and a hair beyond. */
 function standings(
@@ -155,8 +159,9 @@ function standings(
   const places = standingAt(line, placesIn(wheels, direction), front);
   const stand = (side: 0 | 1, holds: (x: number) => boolean): Standing => {
     const on = places.map((x) => (x !== null && holds(x) ? x : null));
-    const values = on.map((x, i) => (x === null ? 0 : wheels[i]!.force * evaluate(line, x)[side]));
-    return { value: values.reduce((sum, value) => sum + value, 0), wheels: on };
+    const ordinates = on.map((x) => (x === null ? null : evaluate(line, x)[side]));
+    const value = ordinates.reduce<number>((sum, y, i) => sum + (y ?? 0) * wheels[i]!.force, 0);
+    return { value, wheels: on, ordinates };
   };
   const always = () => true;
   return [stand(0, always), stand(1, always), stand(0, (x) => x > start), stand(1, (x) => x < end)];

@@ -38,7 +38,7 @@ export const movingLoadRequest = solveRequest.extend({
 export type MovingLoadRequest = z.output<typeof movingLoadRequest>;
 
 const direction = z.enum(['right', 'left']);
-const worst = z.strictObject({
+const anywhere = z.strictObject({
   value: z.number(),
   direction,
   at: z
@@ -49,8 +49,11 @@ const worst = z.strictObject({
   wheels: z
     .array(z.number().nullable())
     .describe('Where each wheel stands with the front at the first of them; null off the beam.'),
+  section: z.number().nullable(),
 });
-const anywhere = worst.extend({ section: z.number().nullable() });
+const worst = anywhere
+  .omit({ section: true })
+  .extend({ ordinates: z.array(z.number().nullable()).describe('Of the line under each wheel.') });
 
 /** What POST /api/v1/beams/moving-load answers with: of the train alone, without any other load. */
 export const movingLoadAnswer = z.strictObject({

@@ -10,6 +10,9 @@ import { Causes } from './Causes';
 import type { TemplateEvaluation } from './evaluate';
 import { ForceMethod } from './ForceMethod';
 import { fieldFaults, putRightFirst, toCauses, toDrawingFault } from './faults';
+import { AxialRule } from './further/AxialRule';
+import { FurtherZone } from './further/FurtherZone';
+import { type AxialState, useAxial } from './further/use-axial';
 import { toResultLines, toRuleLines } from './lines';
 import { ParameterFields } from './ParameterFields';
 import { dayText, type TemplatePageData } from './page';
@@ -21,7 +24,7 @@ import { useTemplatePage } from './use-template-page';
 
 /** A template's page: its values, the beam that follows from them, and how it is worked. */
 export function TemplateSheet({ data }: { readonly data: TemplatePageData }) {
-  const page = useTemplatePage(data);
+  const { page, axial } = useAxial(useTemplatePage(data), data.system);
   const action = useAction(data, page);
   const { row } = data;
   return (
@@ -30,7 +33,8 @@ export function TemplateSheet({ data }: { readonly data: TemplatePageData }) {
         <ParametersZone data={data} page={page} />
         <ElevationZone data={data} page={page} />
       </div>
-      <LowerZones data={data} page={page} action={action} />
+      <FurtherZone good={page.good} isNow={page.outcome.ok} system={data.system} />
+      <LowerZones data={data} page={page} action={action} axial={axial} />
       <TitleStrip
         kind="Template"
         title={row.name}
@@ -127,7 +131,12 @@ function ElevationZone({ data, page }: ZoneProps) {
   );
 }
 
-function LowerZones({ data, page, action }: ZoneProps & { readonly action: BlockAction }) {
+interface LowerProps extends ZoneProps {
+  readonly action: BlockAction;
+  readonly axial: AxialState;
+}
+
+function LowerZones({ data, page, action, axial }: LowerProps) {
   const { evaluation } = page.good;
   const rested = useRestedValue(evaluation);
   const note = page.outcome.ok ? undefined : 'At the last good values';
@@ -142,7 +151,7 @@ function LowerZones({ data, page, action }: ZoneProps & { readonly action: Block
           note={note}
         />
       </section>
-      <RulesAndForms data={data} rested={rested} note={note} />
+      <RulesAndForms data={data} rested={rested} note={note} axial={axial} />
       <aside className="flex min-w-0 flex-col border-ink max-md:border-t md:border-l">
         <ProofAndNotes data={data} />
         <div className="mt-auto">
@@ -158,10 +167,11 @@ interface RulesProps {
   /** The last good evaluation, when the hand has rested. */
   readonly rested: TemplateEvaluation;
   readonly note: string | undefined;
+  readonly axial: AxialState;
 }
 
 /** What is said of the values. */
-const RulesAndForms = memo(function RulesAndForms({ data, rested, note }: RulesProps) {
+const RulesAndForms = memo(function RulesAndForms({ data, rested, note, axial }: RulesProps) {
   const { template, system, formulas } = data;
   const rules = toRuleLines(template, rested.rules, system);
   const results = toResultLines(template, rested.instance, system);
@@ -169,6 +179,7 @@ const RulesAndForms = memo(function RulesAndForms({ data, rested, note }: RulesP
     <div className="min-w-0 border-ink max-md:border-t lg:border-l">
       <Zone letter="E" title="Validity" note={note}>
         <Validity rules={rules} formulas={formulas} />
+        <AxialRule axial={axial} />
       </Zone>
       {results.length > 0 && (
         <Zone letter="F" title="Closed forms" note={note}>

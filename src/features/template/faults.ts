@@ -23,13 +23,16 @@ export interface Cause {
   readonly message: string;
 }
 
+/** What stands beside the parameters. */
+const TITLES: Readonly<Record<string, string>> = { '/ei': 'Bending stiffness', '/axial': 'Axial force' };
+
 export const toCauses = ({ parameters }: Pick<Template, 'parameters'>, faults: readonly Fault[]): Cause[] =>
   faults.map(({ pointer, message }) => {
     const [symbol = ''] = pointer.startsWith(UNDER) ? pointer.slice(UNDER.length).split('/') : [];
     const parameter = parameters.find((one) => one.symbol === symbol);
     return {
       symbol: parameter?.symbol ?? null,
-      title: parameter ? parameter.name : pointer === '/ei' ? 'Bending stiffness' : 'These values together',
+      title: parameter?.name ?? TITLES[pointer] ?? 'These values together',
       message,
     };
   });

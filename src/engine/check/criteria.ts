@@ -10,6 +10,15 @@ const source = z.strictObject({
   from_memory: z.boolean(),
 });
 
+/** How a group's loads stand on the member: each span and overhang only where adverse, or on the whole length at once. */
+const pattern = z.strictObject({
+  group: z.enum(LOAD_GROUPS),
+  where_adverse: z.boolean(),
+  /** Why, printed on the sheet. */
+  basis: z.string().min(1),
+  source,
+});
+
 const strength = z.strictObject({
   /** In words, printed on the sheet: what the factors are and what they stand for. */
   basis: z.string().min(1),
@@ -46,7 +55,10 @@ export const criteriaDocument = z.strictObject({
   letters: z.partialRecord(z.enum(LOAD_GROUPS), z.string().min(1)).optional(),
   strength,
   deflection: z.array(deflectionLimit).min(1),
+  /** Groups that are not named stand on the whole length. */
+  patterns: z.array(pattern).optional(),
   not_checked: z.array(z.string().min(1)).min(1),
 });
 export type Criteria = z.infer<typeof criteriaDocument>;
+export type Pattern = z.infer<typeof pattern>;
 export type DeflectionLimit = z.infer<typeof deflectionLimit>;

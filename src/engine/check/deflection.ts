@@ -1,9 +1,10 @@
-import type { Region } from '../combination/index';
-import { add, evaluate, extremes, type Piecewise, piecewise } from '../polynomial/index';
+import type { ArrangementNamer, Region } from '../combination/index';
+import type { SuperposedBeam } from '../envelope/index';
+import { add, evaluate, type Piecewise, piecewise } from '../polynomial/index';
 import type { UnitSystemName } from '../quantity/index';
 import type { DeflectionLimit } from './criteria';
 import { texFigure } from './figure';
-import type { CheckRow, ServiceArrangement } from './types';
+import type { CheckRow } from './types';
 
 /** The pieces of p between two of its breaks. */
 function restrict(p: Piecewise, from: number, to: number): Piecewise {
@@ -18,21 +19,13 @@ function restrict(p: Piecewise, from: number, to: number): Piecewise {
 
 /**
  * The movement that a limit is about: in a span from the chord between its two supports, in an overhang from its
- * support. m, positive up. The most of either sign, and where (jobmap: upward movement is held to the same ratio).
+ * support. m, positive up.
  */
-function movementIn(region: Region, deflection: Piecewise): { value: number; at: number } {
-  const within = restrict(deflection, region.from, region.to);
-  const left = evaluate(deflection, region.from)[1];
-  const right = evaluate(deflection, region.to)[0];
-  const isLeftOverhang = region.kind === 'overhang' && region.from === 0;
-  const datum: [number, number] =
-    region.kind === 'overhang'
-      ? [isLeftOverhang ? right : left, 0]
-      : [left, (right - left) / (region.to - region.from)];
-  const chord = piecewise([region.from, region.to], [datum.map((c) => -c)]);
-  const { max, min } = extremes(add(within, chord));
-  const most = Math.abs(max.value) > Math.abs(min.value) ? max : min;
-  return { value: most.value, at: most.at[0] ?? region.from };
+function movementIn({ from, to, held }: Region, deflection: Piecewise): Piecewise {
+  const left = evaluate(deflection, from)[1];
+  const right = evaluate(deflection, to)[0];
+  const datum = held === 'both' ? [left, (right - left) / (to - from)] : [held === 'left' ? left : right, 0];
+  return add(restrict(deflection, from, to), piecewise([from, to], [datum.map((c) => -c)]));
 }
 
 /** The limit of a region, m: its length over the ratio, or the absolute cap where that is lower. */
@@ -48,30 +41,40 @@ function ratioInWords(limit: DeflectionLimit, { kind }: Region): string {
   return `${limit.overhang_factor === 1 ? '' : limit.overhang_factor}a/${limit.overhang_ratio}`;
 }
 
-/** One row per limit and region: δ ≤ L/n of a span, or its multiple of an overhang, and the absolute cap. */
+/**
+ * One row per limit and region: δ ≤ L/n of a span, or its multiple of an overhang, and the absolute cap. The most of
+ * either sign over all patterns: upward movement is held to the same ratio.
+ */
 export function deflectionChecks(
-  arrangements: readonly ServiceArrangement[],
+  superposed: SuperposedBeam,
+  limits: readonly DeflectionLimit[],
   regions: readonly Region[],
+  nameOf: ArrangementNamer,
   system: UnitSystemName,
 ): CheckRow[] {
-  return arrangements.flatMap(({ limit, solution }, index) =>
-    regions.map((region) => {
-      const { value, at } = movementIn(region, solution.diagrams.deflection);
+  const combinations = limits.map(({ combination }) => combination);
+  const movements = regions.map((region) =>
+    superposed.measured(({ deflection }) => movementIn(region, deflection), combinations),
+  );
+  return limits.flatMap((limit, index) =>
+    regions.map((region, place): CheckRow => {
+      const { max, min } = movements[place]![index]!;
+      const { value, at, ...by } = Math.abs(max.value) > Math.abs(min.value) ? max : min;
       const capacity = allowedMovement(limit, region);
       const isCapped = capacity === limit.cap;
       const words = isCapped ? 'cap' : ratioInWords(limit, region);
       return {
         id: `deflection-${index}-${region.name.replaceAll(/[^A-Za-z]+/g, '-')}`,
-        kind: 'deflection' as const,
+        kind: 'deflection',
         title: `Deflection, ${limit.name.toLowerCase()}, ${words}`,
-        place: `${region.name}, ${limit.combination.name}${value > 0 ? ', upward' : ''}`,
+        place: `${region.name}, ${nameOf(by)}${value > 0 ? ', upward' : ''}`,
         clause: `${limit.source.publication}, ${limit.source.clause}`,
         demand: Math.abs(value),
         capacity,
-        dimension: 'length' as const,
+        dimension: 'length',
         ratio: Math.abs(value) / capacity,
-        combination: limit.combination.name,
-        at,
+        ...by,
+        at: at[0] ?? region.from,
         symbols: `\\delta \\le ${isCapped ? '\\delta_{max}' : `\\frac{${region.kind === 'span' ? 'L' : `${limit.overhang_factor === 1 ? '' : limit.overhang_factor}a`}}{${region.kind === 'span' ? limit.span_ratio : limit.overhang_ratio}}`}`,
         numbers: `${texFigure(Math.abs(value), 'deflection', system)} \\le ${texFigure(capacity, 'deflection', system)}`,
       };

@@ -2,14 +2,13 @@ export {
   type Criteria,
   criteriaDocument,
   type DeflectionLimit,
+  type Pattern,
 } from './criteria';
 export { checkMember } from './member';
 export type {
-  Arrangement,
   CheckKind,
   CheckRow,
   ElasticSection,
   Finding,
   MemberChecks,
-  ServiceArrangement,
 } from './types';

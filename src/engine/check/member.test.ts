@@ -1,9 +1,16 @@
 import { readFileSync } from 'node:fs';
 import { describe, expect, test } from 'vitest';
 import { prepareBeam } from '../beam/index';
-import { actingCombinations, factoredLoads, regionsOf } from '../combination/index';
+import {
+  actingCombinations,
+  arrangementNamer,
+  type Combination,
+  groupsOf,
+  regionsOf,
+} from '../combination/index';
+import { envelopeTask, SuperposedBeam, solveSources } from '../envelope/index';
 import { type Load, readBeam } from '../model/index';
-import { checkMember, criteriaDocument } from './index';
+import { type Criteria, checkMember, criteriaDocument } from './index';
 
 const criteriaOf = (slug: string) =>
   criteriaDocument.parse(JSON.parse(readFileSync(`data/criteria/${slug}.json`, 'utf8')));
@@ -20,39 +27,52 @@ const IPE_300 = {
 };
 const EI = 210e9 * 8356e-8;
 
-function check(loads: Load[], length = 6, overhang = 0, criteria = steel) {
+interface Given {
+  readonly loads: Load[];
+  readonly supports: number[];
+  readonly length: number;
+  readonly criteria?: Criteria;
+  readonly patterns?: boolean;
+}
+
+function checked({ loads, supports, length, criteria = steel, patterns = true }: Given) {
   const reading = readBeam({
-    length: length + overhang,
+    length,
     ei: EI,
-    supports: [
-      { at: 0, kind: 'pin' },
-      { at: length, kind: 'roller' },
-    ],
+    supports: supports.map((at) => ({ at, kind: 'roller' })),
     loads,
+    horizontal: 'ignore',
   });
   if (!reading.ok) throw new Error(reading.faults[0]?.message);
   const beam = reading.value;
-  const prepared = prepareBeam(beam);
-  const groups = [...new Set(loads.map(({ group = '' }) => group))];
-  const solve = (combinations: Parameters<typeof actingCombinations>[0]) =>
-    actingCombinations(combinations, groups, criteria.letters).map((combination) => ({
-      combination,
-      solution: prepared.solve(factoredLoads(loads, combination)),
-    }));
+  const groups = groupsOf(loads);
+  const patterned = patterns
+    ? (criteria.patterns ?? []).flatMap(({ group, where_adverse }) => (where_adverse ? [group] : []))
+    : [];
+  const { beam: cut, sources } = envelopeTask(beam, { combinations: [], patterns: patterned });
+  const solved = solveSources(prepareBeam(cut), sources);
+  const superposed = new SuperposedBeam(
+    sources,
+    solved.map(({ solution }) => solution),
+  );
+  const acting = (combinations: readonly Combination[]) =>
+    actingCombinations(combinations, groups, criteria.letters);
   return checkMember({
     beam,
+    superposed,
     section: IPE_300,
     criteria,
-    system: 'metric',
-    strength: solve(criteria.strength.combinations),
-    service: criteria.deflection.flatMap((limit) =>
-      solve([limit.combination]).map(({ combination, solution }) => ({
-        limit: { ...limit, combination },
-        solution,
-      })),
+    strength: superposed.combined(acting(criteria.strength.combinations)),
+    limits: criteria.deflection.flatMap((limit) =>
+      acting([limit.combination]).map((combination) => ({ ...limit, combination })),
     ),
+    nameOf: arrangementNamer(beam, patterned),
+    system: 'metric',
   });
 }
+
+const check = (loads: Load[], length = 6, overhang = 0, criteria = steel) =>
+  checked({ loads, supports: [0, length], length: length + overhang, criteria });
 
 const uniform = (w: number, group: string, from = 0, to = 6): Load => ({
   kind: 'line',
@@ -123,6 +143,75 @@ describe('a span of 4 m with an overhang of 2 m', () => {
     });
     if (!reading.ok) throw new Error(reading.faults[0]?.message);
     expect(regionsOf(reading.value).map(({ name }) => name)).toEqual(['span A–B', 'overhang beyond B']);
+  });
+});
+
+describe('two spans of 5.4 m, G 4.42 and Q 18 kN/m, by patterns', () => {
+  const loads = [uniform(4420, 'G', 0, 10.8), uniform(18000, 'Q', 0, 10.8)];
+  const given = { loads, supports: [0, 5.4, 10.8], length: 10.8 };
+  const { rows, findings } = checked(given);
+  const everywhere = checked({ ...given, patterns: false });
+  const row = (id: string, of = rows) => rows && of.find((one) => one.id === id);
+
+  // −wL²/8 with both spans loaded: AISC Manual Table 3-23 case 29 twice, from memory.
+  test('bend most over the middle support, with both loaded', () => {
+    expect(row('bending')?.demand).toBeCloseTo(((1.35 * 4420 + 1.5 * 18000) * 5.4 ** 2) / 8 / 557.1e-6, 0);
+    expect(row('bending')?.place).toBe('at B, 1.35 G + 1.5 Q, all spans loaded');
+    expect(row('bending')).toMatchObject({ combination: '1.35 G + 1.5 Q', pattern: [0, 1] });
+  });
+
+  // 0.00915 wL⁴/EI with one span loaded against 1/184.6 with both: the same table, from memory.
+  test('deflect most with one loaded, nearly twice what both together do', () => {
+    const imposed = rows.find(({ title }) => title.startsWith('Deflection, imposed load'));
+    expect(((imposed?.demand ?? 0) * EI) / (18000 * 5.4 ** 4)).toBeCloseTo(0.00915, 4);
+    expect(imposed?.place).toBe('span A–B, Q, span A–B loaded');
+    const all = everywhere.rows.find(({ title }) => title.startsWith('Deflection, imposed load'));
+    expect((18000 * 5.4 ** 4) / EI / (all?.demand ?? 0)).toBeCloseTo(184.6, 1);
+  });
+
+  // Far support: 3/8 of G less 1/16 of 1.5 Q in the other span: −1.1 kN/… by the same table.
+  test('pull at the support that the load is far from, which full load hides', () => {
+    const pull = (3 / 8) * 4420 * 5.4 - (1 / 16) * 1.5 * 18000 * 5.4;
+    expect(findings.map(({ title }) => title)).toEqual(['Uplift at A', 'Uplift at C']);
+    expect(findings[1]).toMatchObject({ combination: 'G + 1.5 Q', pattern: [0] });
+    expect(findings[1]?.detail).toContain('under G + 1.5 Q, span A–B loaded');
+    expect(findings[1]?.detail).toContain((-pull / 1000).toFixed(1));
+    expect(everywhere.findings).toEqual([]);
+  });
+});
+
+describe('a cantilever, whichever end is built in', () => {
+  test.each([
+    [0, 2],
+    [2, 0],
+  ])('fixed at %d moves down from there to its tip at %d', (root, tip) => {
+    const reading = readBeam({
+      length: 2,
+      ei: EI,
+      supports: [{ at: root, kind: 'fixed' }],
+      loads: [uniform(1000, 'Q', 0, 2)],
+    });
+    if (!reading.ok) throw new Error(reading.faults[0]?.message);
+    const beam = reading.value;
+    const { sources } = envelopeTask(beam, { combinations: [] });
+    const superposed = new SuperposedBeam(
+      sources,
+      solveSources(prepareBeam(beam), sources).map(({ solution }) => solution),
+    );
+    const limit = steel.deflection[0]!;
+    const { rows } = checkMember({
+      beam,
+      superposed,
+      section: IPE_300,
+      criteria: steel,
+      strength: [],
+      limits: [{ ...limit, combination: { name: 'Q', factors: { Q: 1 } } }],
+      nameOf: ({ combination }) => combination,
+      system: 'metric',
+    });
+    const deflection = rows.find(({ kind }) => kind === 'deflection');
+    expect(deflection).toMatchObject({ at: tip, place: 'overhang beyond A, Q' });
+    expect(deflection?.demand).toBeCloseTo((1000 * 2 ** 4) / (8 * EI), 12); // wL⁴/8EI
   });
 });
 

@@ -1,10 +1,4 @@
-import type { Solution } from '../beam/index';
-import type { Combination } from '../combination/index';
 import type { DimensionName } from '../quantity/index';
-import type { DeflectionLimit } from './criteria';
-
-/** One combination's loads, all at once, solved as one beam: a real load arrangement, never an envelope. */
-export type Arrangement = { readonly combination: Combination; readonly solution: Solution };
 
 /** What the elastic checks ask of a section and its material. SI: m³, m², Pa. */
 export type ElasticSection = {
@@ -26,7 +20,7 @@ export type CheckRow = {
   readonly id: string;
   readonly kind: CheckKind;
   readonly title: string;
-  /** Where and under what: "at A, 1.35 G + 1.5 Q". */
+  /** Where and under what: "at A, 1.35 G + 1.5 Q, span A–B loaded". */
   readonly place: string;
   readonly clause: string;
   readonly demand: number;
@@ -34,6 +28,8 @@ export type CheckRow = {
   readonly dimension: DimensionName;
   readonly ratio: number;
   readonly combination: string;
+  /** Indices of the loaded pattern spans; in results of engine 1.0.0 all loads act everywhere, and it is not given. */
+  readonly pattern?: readonly number[];
   readonly at: number;
   readonly symbols: string;
   readonly numbers: string;
@@ -45,6 +41,9 @@ export type Finding = {
   readonly title: string;
   readonly detail: string;
   readonly at: number;
+  /** The loads under which it is so; not given in results of engine 1.0.0. */
+  readonly combination?: string;
+  readonly pattern?: readonly number[];
 };
 
 export type MemberChecks = {
@@ -53,5 +52,3 @@ export type MemberChecks = {
   readonly findings: readonly Finding[];
   readonly notChecked: readonly string[];
 };
-
-export type ServiceArrangement = { readonly limit: DeflectionLimit; readonly solution: Solution };

@@ -9,3 +9,4 @@ export { cutLoads, type SpanLoad } from './cut';
 export { groupsOf, LOAD_GROUP_NAMES, LOAD_GROUPS, type LoadGroup } from './groups';
 export { stillBeam, supportsMove } from './movements';
 export { type Region, regionsOf } from './regions';
+export { type ArrangementNamer, arrangementNamer } from './words';

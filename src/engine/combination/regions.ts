@@ -5,6 +5,8 @@ export type Region = {
   readonly kind: 'span' | 'overhang';
   readonly from: number;
   readonly to: number;
+  /** Where it is supported. */
+  readonly held: 'both' | 'left' | 'right';
   /** "span A–B", "overhang beyond B". */
   readonly name: string;
 };
@@ -20,11 +22,16 @@ export function regionsOf(beam: Pick<Beam, 'length' | 'supports'>): Region[] {
   const first = held[0];
   const last = held.at(-1);
   if (!first || !last) return [];
-  const overhangs = (from: number, to: number, letter: string): Region[] =>
-    to > from ? [{ kind: 'overhang', from, to, name: `overhang beyond ${letter}` }] : [];
+  const overhangs = (from: number, to: number, held: 'left' | 'right', letter: string): Region[] =>
+    to > from ? [{ kind: 'overhang', from, to, held, name: `overhang beyond ${letter}` }] : [];
   const spans = held.slice(1).map((right, index): Region => {
     const left = held[index] ?? first;
-    return { kind: 'span', from: left.at, to: right.at, name: `span ${left.letter}–${right.letter}` };
+    const name = `span ${left.letter}–${right.letter}`;
+    return { kind: 'span', from: left.at, to: right.at, held: 'both', name };
   });
-  return [...overhangs(0, first.at, first.letter), ...spans, ...overhangs(last.at, beam.length, last.letter)];
+  return [
+    ...overhangs(0, first.at, 'right', first.letter),
+    ...spans,
+    ...overhangs(last.at, beam.length, 'left', last.letter),
+  ];
 }

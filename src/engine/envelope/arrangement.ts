@@ -8,10 +8,10 @@ export type LoadArrangement = { readonly combination: string; readonly pattern: 
 
 /** The factored loads of an arrangement. */
 export function arrangementLoads(
-  { sources, cases }: EnvelopeTask,
+  { sources, combinations }: Pick<EnvelopeTask, 'sources' | 'combinations'>,
   { combination: name, pattern }: LoadArrangement,
 ): Load[] {
-  const combination = cases.combinations.find((one) => one.name === name)!;
+  const combination = combinations.find((one) => one.name === name)!;
   const acting = sources.filter(({ span }) => span === null || pattern.includes(span));
   return factoredLoads(
     acting.flatMap(({ loads }) => loads),
@@ -20,12 +20,12 @@ export function arrangementLoads(
 }
 
 /** Every arrangement that governs anything in the envelope, once: in the order of the combinations, then of the spans. */
-export function governingArrangements({ cases }: EnvelopeTask, envelope: Envelope): LoadArrangement[] {
+export function governingArrangements({ combinations }: EnvelopeTask, envelope: Envelope): LoadArrangement[] {
   const found = new Map<string, LoadArrangement>();
   for (const { combination, pattern } of governingValues(envelope)) {
     found.set(JSON.stringify([combination, pattern]), { combination, pattern });
   }
-  const place = (name: string) => cases.combinations.findIndex((one) => one.name === name);
+  const place = (name: string) => combinations.findIndex((one) => one.name === name);
   return [...found.values()].sort(
     (a, b) => place(a.combination) - place(b.combination) || comparePatterns(a.pattern, b.pattern),
   );

@@ -1,16 +1,8 @@
 import { type Combination, factorOf } from '../combination/index';
-import type { Load } from '../model/index';
+import type { Source } from './sources';
 
-/**
- * An elementary load case that the combinations are made of: a group on its whole length, a patterned group on one
- * span, or, with no group, the movements of the supports, which act once and unfactored in every combination.
- */
-export type Source = {
-  readonly group: string | null;
-  /** Index of the pattern span; null where it always acts. */
-  readonly span: number | null;
-  readonly loads: readonly Load[];
-};
+/** What is below this part of the largest value of its kind is rounding: a share that adverse loading leaves out. */
+export const NOTHING = 1e-12;
 
 /**
  * How the sources make up the combinations. They stand in parts: part 0 always acts, and every other part acts, or does

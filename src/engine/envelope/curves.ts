@@ -1,4 +1,4 @@
-import { type Piecewise, piecewise } from '../polynomial/index';
+import type { Piecewise } from '../polynomial/index';
 import type { Cases } from './cases';
 
 /**
@@ -84,6 +84,18 @@ function halve(whole: Float64Array, control: Float64Array, first: number, step: 
   }
 }
 
+/** The pieces first … last − 1. */
+export function between(curves: Curves, first: number, last: number): Curves {
+  const { breaks, degree, count, power, control } = curves;
+  const [width, wide] = [(degree + 1) * count, (2 * degree + 1) * count];
+  return {
+    ...curves,
+    breaks: breaks.subarray(first, last + 1),
+    power: power.subarray(first * width, last * width),
+    control: control.subarray(first * wide, last * wide),
+  };
+}
+
 /** The values of all sources at t of piece k, by Horner's rule. */
 export function valuesAt({ degree, count, power }: Curves, k: number, t: number, values: Float64Array): void {
   const first = k * (degree + 1) * count;
@@ -112,23 +124,4 @@ export function dot(factors: Float64Array, values: Float64Array, at: number): nu
   let sum = 0;
   for (let i = 0; i < factors.length; i++) sum += factors[i]! * values[at + i]!;
   return sum;
-}
-
-/** The curve of one arrangement over pieces first … last − 1. */
-export function arrangementCurve(
-  { breaks, degree, count, power }: Curves,
-  cases: Cases,
-  arrangement: Arrangement,
-  first: number,
-  last: number,
-): Piecewise {
-  const factors = actingFactors(cases, arrangement);
-  const pieces = Array.from({ length: last - first }, (_, k) => {
-    const h = breaks[first + k + 1]! - breaks[first + k]!;
-    return Array.from(
-      { length: degree + 1 },
-      (_, j) => dot(factors, power, ((first + k) * (degree + 1) + j) * count) / h ** j,
-    );
-  });
-  return piecewise(breaks.subarray(first, last + 1), pieces);
 }

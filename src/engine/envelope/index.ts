@@ -1,7 +1,8 @@
-export type { LoadArrangement } from './arrangement';
+export { arrangementLoads, type LoadArrangement } from './arrangement';
 export { type EnvelopeDocument, type EnvelopeTask, envelopeTask, readEnvelope } from './read';
 export { arrangementCount } from './resting';
-export { type EnvelopeSolution, type SolvedCase, solveEnvelope } from './solve';
-export { type Elementary, superposedEnvelope } from './superposed';
+export { type EnvelopeSolution, type SolvedCase, solveEnvelope, solveSources } from './solve';
+export type { Source } from './sources';
+export { SuperposedBeam } from './superposed';
 export type * from './types';
 export { QUANTITIES } from './types';

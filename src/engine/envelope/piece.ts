@@ -5,18 +5,14 @@ import { horner, UnitRoots } from './roots';
 const WIDTH = 6; // coefficients of a fifth-degree polynomial
 
 /**
- * The largest value of an envelope within one piece, exactly. Between the zeros of the spans' shares the same spans
- * are adverse throughout, so that the envelope is one polynomial there, largest at its ends or where its slope is zero.
- * Answers in its fields.
+ * The envelope of a combination within one piece. Between the zeros of the spans' shares the same spans are adverse
+ * throughout, so that it is one polynomial of t there.
  */
-export class PieceMaximum {
-  value = 0;
-  t = 0;
+export class PieceEnvelope {
   private readonly roots = new UnitRoots();
-  /** What is adverse throughout the piece, and what is so between two neighbouring zeros, with its slope. */
+  /** What is adverse throughout the piece, and what is so between two neighbouring zeros. */
   private readonly steady = new Float64Array(WIDTH);
   private readonly sum = new Float64Array(WIDTH);
-  private readonly slope = new Float64Array(WIDTH);
   /** The shares that change their sign within the piece, and how many there are. */
   private readonly changing: Float64Array[];
   private changes = 0;
@@ -32,8 +28,28 @@ export class PieceMaximum {
     this.cuts = new Float64Array(2 + cases.spans.length * (WIDTH - 1));
   }
 
-  /** The largest of sense · envelope of a combination within piece k. */
-  find(k: number, combination: number, sense: Sense): void {
+  /**
+   * Visits the stretches of piece k from left to right with the polynomial of sense · envelope, up to the degree of the
+   * curves. Its coefficients are the visitor's until it returns.
+   */
+  walk(
+    k: number,
+    combination: number,
+    sense: Sense,
+    visit: (from: number, to: number, a: Float64Array) => void,
+  ): void {
+    this.collect(k, combination, sense);
+    const cuts = this.cutAtZeros();
+    for (let i = 1; i < cuts; i++) {
+      const [from, to] = [this.cuts[i - 1]!, this.cuts[i]!];
+      this.sum.set(this.steady);
+      this.addAdverse((from + to) / 2);
+      visit(from, to, this.sum);
+    }
+  }
+
+  /** Sorts the shares of the spans into those that are adverse throughout, never, and by turns. */
+  private collect(k: number, combination: number, sense: Sense): void {
     this.steady.fill(0);
     this.changes = 0;
     this.addShare(0, k, combination, sense, this.steady);
@@ -42,9 +58,15 @@ export class PieceMaximum {
       if (sign > 0) this.addShare(part, k, combination, sense, this.steady);
       else if (sign === 0) this.addShare(part, k, combination, sense, this.changing[this.changes++]!.fill(0));
     }
-    const cuts = this.cutAtZeros();
-    this.value = Number.NEGATIVE_INFINITY;
-    for (let i = 1; i < cuts; i++) this.searchBetween(this.cuts[i - 1]!, this.cuts[i]!);
+  }
+
+  /** Adds the changing shares that are adverse at t. */
+  private addAdverse(t: number): void {
+    const { degree } = this.curves;
+    for (let p = 0; p < this.changes; p++) {
+      const share = this.changing[p]!;
+      if (horner(share, degree, t) > 0) for (let j = 0; j <= degree; j++) this.sum[j]! += share[j]!;
+    }
   }
 
   /** 1 where a share is adverse all along the piece, −1 where it never is, 0 where that may change. */
@@ -80,28 +102,41 @@ export class PieceMaximum {
     if (this.changes > 1) this.cuts.subarray(0, count).sort();
     return count;
   }
+}
 
-  private searchBetween(from: number, to: number): void {
-    const { degree } = this.curves;
-    const { sum, slope } = this;
-    const middle = (from + to) / 2;
-    sum.set(this.steady);
-    for (let p = 0; p < this.changes; p++) {
-      const share = this.changing[p]!;
-      if (horner(share, degree, middle) > 0) for (let j = 0; j <= degree; j++) sum[j]! += share[j]!;
-    }
-    this.tryAt(from);
-    this.tryAt(to);
-    for (let j = 1; j <= degree; j++) slope[j - 1] = sum[j]! * j;
-    const turns = degree > 0 ? this.roots.find(slope, degree - 1) : 0;
-    for (let i = 0; i < turns; i++) {
-      const t = this.roots.roots[i]!;
-      if (t > from && t < to) this.tryAt(t);
-    }
+/** The largest value of an envelope within one piece, exactly: at the ends of its stretches or where its slope is zero. */
+export class PieceMaximum {
+  value = 0;
+  t = 0;
+  private readonly envelope: PieceEnvelope;
+  private readonly roots = new UnitRoots();
+  private readonly slope = new Float64Array(WIDTH);
+  private readonly degree: number;
+
+  constructor(curves: Curves, cases: Cases, nothing: number) {
+    this.envelope = new PieceEnvelope(curves, cases, nothing);
+    this.degree = curves.degree;
   }
 
-  private tryAt(t: number): void {
-    const value = horner(this.sum, this.curves.degree, t);
+  /** The largest of sense · envelope of a combination within piece k, into `value` and `t`. */
+  find(k: number, combination: number, sense: Sense): void {
+    this.value = Number.NEGATIVE_INFINITY;
+    this.envelope.walk(k, combination, sense, this.search);
+  }
+
+  private readonly search = (from: number, to: number, a: Float64Array): void => {
+    this.tryAt(a, from);
+    this.tryAt(a, to);
+    for (let j = 1; j <= this.degree; j++) this.slope[j - 1] = a[j]! * j;
+    const turns = this.degree > 0 ? this.roots.find(this.slope, this.degree - 1) : 0;
+    for (let i = 0; i < turns; i++) {
+      const t = this.roots.roots[i]!;
+      if (t > from && t < to) this.tryAt(a, t);
+    }
+  };
+
+  private tryAt(a: Float64Array, t: number): void {
+    const value = horner(a, this.degree, t);
     if (value > this.value) {
       this.value = value;
       this.t = t;

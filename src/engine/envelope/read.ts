@@ -1,4 +1,4 @@
-import { type Combination, cutLoads, type Region, regionsOf, supportsMove } from '../combination/index';
+import { type Combination, type Region, regionsOf } from '../combination/index';
 import {
   type Beam,
   type BeamDocument,
@@ -11,7 +11,7 @@ import {
   type Support,
   type SupportDocument,
 } from '../model/index';
-import { type Cases, casesOf, type Source } from './cases';
+import { type Source, sourcesOf } from './sources';
 
 /** A beam with the combinations of its load groups. Every load has a group. */
 export type EnvelopeDocument = Omit<BeamDocument, 'supports' | 'loads'> & {
@@ -29,7 +29,7 @@ export type EnvelopeTask = {
   readonly redundants: readonly Redundant[] | undefined;
   readonly spans: readonly Region[];
   readonly sources: readonly Source[];
-  readonly cases: Cases;
+  readonly combinations: readonly Combination[];
   /** Indices of the supports that cannot pull. */
   readonly liftOff: readonly number[];
 };
@@ -64,31 +64,9 @@ export function envelopeTask(
     redundants: given.redundants,
     spans,
     sources,
-    cases: casesOf(sources, given.combinations),
+    combinations: given.combinations,
     liftOff: given.liftOff ?? [],
   };
-}
-
-/** What always acts first: the supports' movements, then whole groups. Then the patterned groups span by span. */
-function sourcesOf(beam: Beam, spans: readonly Region[], patterns: readonly string[]): Source[] {
-  const groups = [...new Set(beam.loads.flatMap(({ group }) => (group === undefined ? [] : [group])))];
-  const loadsOf = (group: string) => beam.loads.filter((load) => load.group === group);
-  const [patterned, whole] = [
-    groups.filter((group) => patterns.includes(group)),
-    groups.filter((group) => !patterns.includes(group)),
-  ];
-  const cut = patterned.map((group) => ({ group, parts: cutLoads(loadsOf(group), spans) }));
-  return [
-    ...(supportsMove(beam) || groups.length === 0 ? [{ group: null, span: null, loads: [] }] : []),
-    ...whole.map((group) => ({ group, span: null, loads: loadsOf(group) })),
-    ...spans.flatMap((_, span) =>
-      cut.flatMap(({ group, parts }) => {
-        const loads = parts.filter((part) => part.span === span).map(({ load }) => load);
-        // Loads of no length are in no span; their group is there all the same.
-        return loads.length > 0 || (parts.length === 0 && span === 0) ? [{ group, span, loads }] : [];
-      }),
-    ),
-  ];
 }
 
 /** Results name their combination, so that no two may have one name. */

@@ -1,18 +1,17 @@
 import { type Extremes, type Pair, type Solution, stationsAt } from '../beam/index';
 import { factorOf } from '../combination/index';
 import { arrangementLoads, type LoadArrangement } from './arrangement';
+import { NOTHING } from './cases';
 import type { ContactBeam } from './contact';
 import type { EnvelopeTask } from './read';
-import { NOTHING } from './search';
 import {
+  byQuantity,
   type Envelope,
   type EnvelopeReaction,
   type EnvelopeStation,
   type Governing,
   type GoverningExtreme,
   type GroupReaction,
-  QUANTITIES,
-  type Quantity,
   type Range,
 } from './types';
 
@@ -43,8 +42,8 @@ export function restingEnvelope(
 }
 
 /** Every combination with every set of its spans that carry patterned loads, the empty set first. */
-export function arrangementsOf({ sources, cases }: EnvelopeTask): LoadArrangement[] {
-  return cases.combinations.flatMap((combination) => {
+export function arrangementsOf({ sources, combinations }: EnvelopeTask): LoadArrangement[] {
+  return combinations.flatMap((combination) => {
     const acting = sources.filter(({ group }) => group !== null && factorOf(combination, group) !== 0);
     const spans = [...new Set(acting.flatMap(({ span }) => (span === null ? [] : [span])))];
     return Array.from({ length: 2 ** spans.length }, (_, set) => ({
@@ -55,8 +54,11 @@ export function arrangementsOf({ sources, cases }: EnvelopeTask): LoadArrangemen
 }
 
 /** How many there are, without listing them. */
-export const arrangementCount = ({ sources, cases }: EnvelopeTask): number =>
-  cases.combinations.reduce((total, combination) => {
+export const arrangementCount = ({
+  sources,
+  combinations,
+}: Pick<EnvelopeTask, 'sources' | 'combinations'>): number =>
+  combinations.reduce((total, combination) => {
     const acting = sources.filter(({ group }) => group !== null && factorOf(combination, group) !== 0);
     return total + 2 ** new Set(acting.flatMap(({ span }) => (span === null ? [] : [span]))).size;
   }, 0);
@@ -93,9 +95,6 @@ function envelopeOfOne(
     }),
   };
 }
-
-const byQuantity = <T>(of: (quantity: Quantity) => T): Record<Quantity, T> =>
-  Object.fromEntries(QUANTITIES.map((quantity) => [quantity, of(quantity)])) as Record<Quantity, T>;
 
 /** Both envelopes in one; of values that differ by rounding the first stays. */
 function widened(envelope: Envelope, other: Envelope, extremes: Extremes): Envelope {

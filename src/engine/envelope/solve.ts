@@ -3,9 +3,11 @@ import { stillBeam } from '../combination/index';
 import type { Beam, Fault, Reading } from '../model/index';
 import { arrangementLoads, governingArrangements, type LoadArrangement } from './arrangement';
 import { ContactBeam, type Resting } from './contact';
+import { groupReactions } from './reactions';
 import type { EnvelopeTask } from './read';
 import { restingEnvelope } from './resting';
-import { groupReactions, superposedEnvelope, valuesOf } from './superposed';
+import type { Source } from './sources';
+import { SuperposedBeam } from './superposed';
 import type { Envelope } from './types';
 
 /** A beam with the loads that it was solved for, and the solution: what a proof asks for. */
@@ -26,26 +28,19 @@ export type EnvelopeSolution = {
  * Fails with SingularMatrix as `prepareBeam` does.
  */
 export function solveEnvelope(task: EnvelopeTask, positions: readonly number[]): Reading<EnvelopeSolution> {
-  const { beam, redundants, sources, cases, liftOff } = task;
+  const { beam, redundants, sources, combinations, liftOff } = task;
   const prepared = prepareBeam(beam, redundants);
-  const solved = sources.map(({ group, loads }) => solveSource(prepared, loads, group === null));
+  const solved = solveSources(prepared, sources);
   const elementary = solved.map(({ solution }) => solution);
   if (liftOff.length === 0) {
-    const envelope = superposedEnvelope(sources, elementary, cases, positions);
+    const envelope = new SuperposedBeam(sources, elementary).envelope(combinations, positions);
     const governing = governingArrangements(task, envelope);
     const arrangements = () =>
       governing.map((of) => ({ ...of, ...solveArrangement(prepared, task, of), lifted: [] }));
     return { ok: true, value: { envelope, solved, governing, arrangements } };
   }
   const contact = new ContactBeam(beam, liftOff, redundants);
-  const groups = beam.supports.map((_, support) =>
-    groupReactions(
-      sources,
-      valuesOf(elementary, support, 'vertical'),
-      valuesOf(elementary, support, 'moment'),
-    ),
-  );
-  const found = restingEnvelope(task, contact, positions, groups);
+  const found = restingEnvelope(task, contact, positions, groupReactions(sources, elementary));
   if (!found.ok) return { ok: false, faults: [liftOffFault(task, found)] };
   const { envelope } = found;
   const governing = governingArrangements(task, envelope);
@@ -56,14 +51,16 @@ export function solveEnvelope(task: EnvelopeTask, positions: readonly number[]):
   };
 }
 
-/** One source unfactored; the supports move only where they are the source. */
-function solveSource(prepared: PreparedBeam, loads: Beam['loads'], movements: boolean): SolvedCase {
-  const { beam } = prepared;
-  return {
-    beam: { ...(movements ? beam : stillBeam(beam)), loads },
-    solution: prepared.solve(loads, { movements }),
-  };
-}
+/** Each source by itself, unfactored; the supports move only where they are the source. */
+export const solveSources = (prepared: PreparedBeam, sources: readonly Source[]): SolvedCase[] =>
+  sources.map(({ group, loads }) => {
+    const movements = group === null;
+    const { beam } = prepared;
+    return {
+      beam: { ...(movements ? beam : stillBeam(beam)), loads },
+      solution: prepared.solve(loads, { movements }),
+    };
+  });
 
 function solveArrangement(prepared: PreparedBeam, task: EnvelopeTask, of: LoadArrangement): SolvedCase {
   const loads = arrangementLoads(task, of);
@@ -77,10 +74,10 @@ function rested(contact: ContactBeam, task: EnvelopeTask, of: LoadArrangement): 
 }
 
 function liftOffFault(
-  { cases }: EnvelopeTask,
+  { combinations }: EnvelopeTask,
   { arrangement: { combination, pattern }, message }: { arrangement: LoadArrangement; message: string },
 ): Fault {
-  const index = cases.combinations.findIndex(({ name }) => name === combination);
+  const index = combinations.findIndex(({ name }) => name === combination);
   const spans = pattern.length === 0 ? '' : `, with the pattern [${pattern.join(', ')}]`;
   return {
     path: ['combinations', index],

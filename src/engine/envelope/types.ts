@@ -1,4 +1,5 @@
-import type { Reaction } from '../beam/index';
+import type { Diagrams, Reaction } from '../beam/index';
+import type { Combination } from '../combination/index';
 
 export const QUANTITIES = ['shear', 'moment', 'slope', 'deflection'] as const;
 export type Quantity = (typeof QUANTITIES)[number];
@@ -41,6 +42,23 @@ export type Envelope = {
   reactions: EnvelopeReaction[];
 };
 
-/** What superposition asks of a solved source. */
-export type { Diagrams, Reaction } from '../beam/index';
+export type { Diagrams, Reaction };
+
+/** What one combination comes to over all patterns of its loads. */
+export type CombinationEnvelope = { readonly combination: Combination } & Pick<
+  Envelope,
+  'extremes' | 'reactions'
+>;
+
+/** What superposition asks of a solved source. All sources of a beam have the same breaks. */
+export type Elementary = { readonly diagrams: Diagrams; readonly reactions: readonly Reaction[] };
+
 export type ReactionComponent = Exclude<keyof Reaction, 'at'>;
+
+/** The same of all four quantities. */
+export const byQuantity = <T>(of: (quantity: Quantity) => T): Record<Quantity, T> => ({
+  shear: of('shear'),
+  moment: of('moment'),
+  slope: of('slope'),
+  deflection: of('deflection'),
+});

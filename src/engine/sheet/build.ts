@@ -1,5 +1,6 @@
 import { basisBlocks } from './basis';
 import { checkBlocks } from './checks';
+import { combinationBlocks } from './combinations';
 import { derivationBlocks } from './derivation';
 import { figuresOf } from './figures';
 import { givensTable } from './givens';
@@ -9,7 +10,7 @@ import { sectionBlocks } from './section';
 import type { SheetBlock, SheetCaution, SheetInput } from './types';
 
 /**
- * The calc sheet of a member as blocks, in the order in which a checker reads: what it covers, givens, drawing,
+ * The calc sheet of a member as blocks, in the order in which a checker reads: what it covers, givens, combinations, drawing,
  * derivation, results, section, checks, reactions, cautions. Every figure is one that was stored, shown in the units and
  * the rounding of the job's unit system; nothing is solved here.
  */
@@ -18,6 +19,7 @@ export function buildSheet(input: SheetInput): SheetBlock[] {
   const sections: [title: string, blocks: SheetBlock[]][] = [
     ['What this sheet covers', covers(input)],
     ['Givens', [givensTable(input, figures), ...basisBlocks(input, figures)]],
+    ['Combinations and patterns', combinationBlocks(input)],
     ['Elevation and diagrams: all loads together, unfactored', [drawing(input)]],
     ['Derivation', derivationBlocks(input)],
     ['Results', resultBlocks(input, figures)],

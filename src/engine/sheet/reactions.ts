@@ -1,4 +1,5 @@
-import type { Reaction } from '../beam/index';
+import { type ArrangementNamer, arrangementNamer } from '../combination/index';
+import type { Governing } from '../envelope/index';
 import { type LetteredSupport, letteredSupports } from '../model/index';
 import type { Figures } from './figures';
 import { figureColumn } from './results';
@@ -8,32 +9,43 @@ import type { Cell, SheetBlock, SheetColumn, SheetInput, SheetRow } from './type
 type Held = {
   readonly tex: string;
   readonly unit: string;
-  readonly of: (reactions: readonly Reaction[]) => number;
+  readonly support: number;
+  readonly component: 'vertical' | 'moment';
   readonly text: (value: number) => string;
 };
 
 /** Reactions by group, unfactored, to hand on; then their range over the strength combinations. */
 export function reactionBlocks({ result }: SheetInput, figures: Figures): SheetBlock[] {
-  const { beam, groups, total, strength, checks } = result;
+  const { beam, groups, group_reactions: ranges, total, strength, checks, patterning } = result;
+  const nameOf = arrangementNamer(beam, patterning.groups);
   const held = letteredSupports(beam).flatMap((support) => heldBy(support, figures));
   const columns: SheetColumn[] = [
     { title: 'Reaction' },
     { title: 'Unit' },
-    ...groups.map(({ group }) => figureColumn(group === 'movements' ? 'Movements' : group, '')),
+    ...groups.flatMap(({ group }) => [
+      figureColumn(group === 'movements' ? 'Movements' : group, ''),
+      ...(patterning.groups.includes(group)
+        ? [figureColumn(`${group} most`, ''), figureColumn(`${group} least`, '')]
+        : []),
+    ]),
     figureColumn('All together', ''),
   ];
-  const rows = held.map(({ tex, unit, of, text }): SheetRow => {
-    const values = [...groups.map(({ solution }) => of(solution.reactions)), of(total.reactions)];
-    return { cells: [{ tex }, unit, ...values.map(text)] };
+  const rows = held.map(({ tex, unit, support, component, text }): SheetRow => {
+    const values = groups.flatMap(({ group, solution }) => {
+      const range = ranges[support]?.[group]?.[component];
+      const whole = solution.reactions[support]?.[component] ?? 0;
+      return typeof range === 'object' ? [whole, range.max, range.min] : [whole];
+    });
+    return { cells: [{ tex }, unit, ...[...values, total.reactions[support]?.[component] ?? 0].map(text)] };
   });
   return [
     { kind: 'table', name: 'Reactions by group, unfactored', columns, rows },
     {
       kind: 'text',
       tone: 'note',
-      text: 'Unfactored, to be handed on by group. Up and anticlockwise on the beam are positive; uplift is negative and named.',
+      text: `Unfactored, to be handed on by group. Up and anticlockwise on the beam are positive; uplift is negative and named.${patterning.groups.length > 0 ? ' Most and least: of the adverse spans alone.' : ''}`,
     },
-    ...(strength.length === 0 ? [] : [rangeTable(held, strength)]),
+    ...(strength.length === 0 ? [] : [rangeTable(held, strength, nameOf)]),
     ...(checks?.findings ?? []).map(
       ({ title, detail }): SheetBlock => ({ kind: 'text', tone: 'warning', text: `${title}: ${detail}` }),
     ),
@@ -45,7 +57,8 @@ function heldBy({ support, letter, index }: LetteredSupport, figures: Figures): 
   const force: Held = {
     tex: `R_{${letter}}`,
     unit: figures.unit('reaction'),
-    of: (reactions) => reactions[index]?.vertical ?? 0,
+    support: index,
+    component: 'vertical',
     text: (value) => {
       const text = figures.value(value, 'reaction');
       return value < 0 && /[1-9]/.test(text) ? `${text}\u00a0uplift` : text;
@@ -54,22 +67,32 @@ function heldBy({ support, letter, index }: LetteredSupport, figures: Figures): 
   const moment: Held = {
     tex: `M_{${letter}}`,
     unit: figures.unit('moment'),
-    of: (reactions) => reactions[index]?.moment ?? 0,
+    support: index,
+    component: 'moment',
     text: (value) => figures.value(value, 'moment'),
   };
   return [...(vertical.kind === 'free' ? [] : [force]), ...(rotation.kind === 'free' ? [] : [moment])];
 }
 
-function rangeTable(held: readonly Held[], strength: SheetInput['result']['strength']): SheetBlock {
-  const rows = held.map(({ tex, unit, of, text }): SheetRow => {
-    const all = strength.map(({ combination, reactions }) => ({
-      name: combination.name,
-      value: of(reactions),
-    }));
-    const by = (better: (a: number, b: number) => boolean) =>
-      all.reduce((best, one) => (better(one.value, best.value) ? one : best));
-    const cellsOf = ({ name, value }: { name: string; value: number }): Cell[] => [text(value), name];
-    return { cells: [{ tex }, unit, ...cellsOf(by((a, b) => a > b)), ...cellsOf(by((a, b) => a < b))] };
+function rangeTable(
+  held: readonly Held[],
+  strength: SheetInput['result']['strength'],
+  nameOf: ArrangementNamer,
+): SheetBlock {
+  const rows = held.map(({ tex, unit, support, component, text }): SheetRow => {
+    const of = (side: 'max' | 'min') =>
+      strength.flatMap(({ reactions }) => reactions[support]?.[side][component] ?? []);
+    const cellsOf = (governing: Governing | undefined): Cell[] =>
+      governing ? [text(governing.value), nameOf(governing)] : ['', ''];
+    const most = of('max').reduce<Governing | undefined>(
+      (a, b) => (a && a.value >= b.value ? a : b),
+      undefined,
+    );
+    const least = of('min').reduce<Governing | undefined>(
+      (a, b) => (a && a.value <= b.value ? a : b),
+      undefined,
+    );
+    return { cells: [{ tex }, unit, ...cellsOf(most), ...cellsOf(least)] };
   });
   const columns: SheetColumn[] = [
     { title: 'Factored' },
@@ -79,5 +102,5 @@ function rangeTable(held: readonly Held[], strength: SheetInput['result']['stren
     figureColumn('Least', ''),
     { title: 'under' },
   ];
-  return { kind: 'table', name: 'Factored reactions, strength combinations', columns, rows };
+  return { kind: 'table', name: 'Factored reactions, strength combinations and patterns', columns, rows };
 }

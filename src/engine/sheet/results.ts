@@ -1,4 +1,5 @@
 import type { Extremes } from '../beam/index';
+import { type ArrangementNamer, arrangementNamer } from '../combination/index';
 import { type Figures, shareText } from './figures';
 import { groupText } from './givens';
 import type { SheetBlock, SheetColumn, SheetInput, SheetRow } from './types';
@@ -18,16 +19,18 @@ export function resultBlocks({ result, criteria }: SheetInput, figures: Figures)
   ];
   const combined = (list: typeof strength): Loaded[] =>
     list.map(({ combination, extremes }) => ({ name: combination.name, extremes }));
+  const nameOf = arrangementNamer(result.beam, result.patterning.groups);
   return [
     forcesTable([...unfactored, ...combined(strength)], figures),
     ...(criteria
       ? [{ kind: 'text', tone: 'note', text: `Combinations: ${indexed(criteria.basis)}.` } as const]
       : []),
     deflectionTable([...unfactored, ...onlyOnce(combined(service))], figures),
+    ...governingTable(result, nameOf, figures),
     {
       kind: 'text',
       tone: 'note',
-      text: `Two methods, force method and direct stiffness, agree within ${shareText(proof.agreement)} of the largest value. Equilibrium closes within ${shareText(proof.equilibrium)} and compatibility within ${shareText(proof.compatibility)}: the worst of ${proof.arrangements} arrangements solved.`,
+      text: `Two methods, force method and direct stiffness, agree within ${shareText(proof.agreement)} of the largest value. Equilibrium closes within ${shareText(proof.equilibrium)} and compatibility within ${shareText(proof.compatibility)}: the worst of ${proof.arrangements} load cases solved.`,
     },
   ];
 }
@@ -87,6 +90,49 @@ function deflectionTable(loaded: readonly Loaded[], figures: Figures): SheetBloc
       return strong ? { cells, strong } : { cells };
     }),
   };
+}
+
+/** What gives the greatest figures of all: the loads that act at once, over all combinations and patterns. */
+function governingTable(
+  { strength, service }: SheetInput['result'],
+  nameOf: ArrangementNamer,
+  figures: Figures,
+): SheetBlock[] {
+  const rowOf = (
+    title: string,
+    quantity: 'shear' | 'moment' | 'deflection',
+    purpose: 'force' | 'moment' | 'deflection',
+    sense: 1 | -1,
+  ): SheetRow[] => {
+    const side = sense > 0 ? 'max' : 'min';
+    const all = (quantity === 'deflection' ? service : strength).map(
+      ({ extremes }) => extremes[quantity][side],
+    );
+    const [first, ...others] = all;
+    if (!first) return [];
+    const most = others.reduce((a, b) => (sense * b.value > sense * a.value ? b : a), first);
+    // Down is positive on a sheet.
+    const shown = quantity === 'deflection' ? -most.value : most.value;
+    const text = figures.value(shown, purpose);
+    if (!(sense * most.value > 0 && /[1-9]/.test(text))) return [];
+    return [{ cells: [title, text, figures.unit(purpose), place(most.at, figures), nameOf(most)] }];
+  };
+  const rows = [
+    ...rowOf('Shear, most', 'shear', 'force', 1),
+    ...rowOf('Shear, least', 'shear', 'force', -1),
+    ...rowOf('Sagging', 'moment', 'moment', 1),
+    ...rowOf('Hogging', 'moment', 'moment', -1),
+    ...rowOf('Deflection down', 'deflection', 'deflection', -1),
+    ...rowOf('Deflection up', 'deflection', 'deflection', 1),
+  ];
+  const columns = [
+    { title: 'Governing' },
+    figureColumn('Value', ''),
+    { title: 'Unit' },
+    figureColumn('at', figures.unit('position')),
+    { title: 'under' },
+  ];
+  return rows.length > 0 ? [{ kind: 'table', name: 'Governing loads', columns, rows }] : [];
 }
 
 /** A peak of the sense asked for and its place; none where everything is of the other. */

@@ -1,7 +1,8 @@
 import type { Extremes, Reaction, Solution } from '../beam/index';
-import type { CheckRow, Finding } from '../check/index';
-import type { Combination } from '../combination/index';
+import type { CheckRow, Finding, Pattern } from '../check/index';
+import type { Combination, GroupLetters } from '../combination/index';
 import type { DerivationStep } from '../derivation/index';
+import type { CombinationEnvelope, EnvelopeReaction, GroupReaction } from '../envelope/index';
 import type { Beam } from '../model/index';
 import type { UnitSystemName } from '../quantity/index';
 import type { Dimensioned, NamedLoad, RuleOutcome, Template } from '../template/index';
@@ -21,12 +22,17 @@ export type SheetInput = {
   /** By symbol, as typed. */
   readonly parameters: Readonly<Record<string, unknown>>;
   readonly ownWeight: { readonly acts: boolean; readonly reason: string };
+  /** Whether groups that the criteria say so act only where adverse; why not, where that is switched off. */
+  readonly patterns: { readonly act: boolean; readonly reason: string };
   readonly section: SheetSection | null;
   readonly criteria: {
     readonly name: string;
     readonly revision: number;
     /** What the factors of the strength combinations stand for. */
     readonly basis: string;
+    readonly combinations: readonly Combination[];
+    readonly letters: GroupLetters;
+    readonly patterns: readonly Pattern[];
   } | null;
   readonly result: SheetResult;
   readonly cautions: readonly SheetCaution[];
@@ -44,7 +50,10 @@ type SheetSection = {
 export type SheetCaution = { readonly title: string; readonly text: string; readonly version: number };
 
 type Found = { readonly reactions: readonly Reaction[]; readonly extremes: Extremes };
-type Combined = Found & { readonly combination: Combination };
+/** A combination over all its patterns. */
+type Combined = Pick<CombinationEnvelope, 'combination' | 'extremes'> & {
+  readonly reactions: readonly Omit<EnvelopeReaction, 'groups'>[];
+};
 
 /** The part of a stored result that is printed. */
 type SheetResult = {
@@ -64,8 +73,10 @@ type SheetResult = {
   readonly load_names: readonly NamedLoad[];
   readonly total: Solution;
   readonly groups: readonly { readonly group: string; readonly solution: Found }[];
+  readonly group_reactions: readonly Readonly<Record<string, GroupReaction>>[];
   readonly strength: readonly Combined[];
-  readonly service: readonly Combined[];
+  readonly service: readonly (Combined & { readonly limit: { readonly name: string } })[];
+  readonly patterning: { readonly groups: readonly string[]; readonly arrangements: number };
   readonly checks: {
     readonly rows: readonly CheckRow[];
     readonly findings: readonly Finding[];

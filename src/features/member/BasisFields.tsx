@@ -40,6 +40,11 @@ export function BasisFields({ draft, criteria, faults, onChange }: BasisFieldsPr
           help={criteria.find(({ slug }) => slug === draft.criteria)?.document.summary}
           onChange={(event) => onChange({ criteria: event.target.value })}
         />
+        <Patterns
+          draft={draft}
+          criteria={criteria.find(({ slug }) => slug === draft.criteria)}
+          onChange={onChange}
+        />
       </div>
     </>
   );
@@ -63,6 +68,36 @@ function OwnWeight({ draft, onChange }: Pick<BasisFieldsProps, 'draft' | 'onChan
             draft.selfWeightReason.trim() === '' ? 'Say why. The reason is printed on the sheet.' : undefined
           }
           onChange={(event) => onChange({ selfWeightReason: event.target.value })}
+        />
+      )}
+    </>
+  );
+}
+
+/** Which groups act only where adverse: the criteria say so, and the member may not, for a reason. */
+function Patterns({
+  draft,
+  criteria,
+  onChange,
+}: Pick<BasisFieldsProps, 'draft' | 'onChange'> & { readonly criteria: CriteriaChoice | undefined }) {
+  const groups = (criteria?.document.patterns ?? []).flatMap(({ group, where_adverse }) =>
+    where_adverse ? [criteria?.document.letters?.[group] ?? group] : [],
+  );
+  if (groups.length === 0) return null;
+  return (
+    <>
+      <Checkbox checked={draft.patterns} onChange={(event) => onChange({ patterns: event.target.checked })}>
+        {groups.join(' and ')} only on the spans where adverse
+      </Checkbox>
+      {!draft.patterns && (
+        <Field
+          label="On the whole length because"
+          value={draft.patternsReason}
+          maxLength={300}
+          error={
+            draft.patternsReason.trim() === '' ? 'Say why. The reason is printed on the sheet.' : undefined
+          }
+          onChange={(event) => onChange({ patternsReason: event.target.value })}
         />
       )}
     </>

@@ -40,8 +40,9 @@ export function BasisZone({ template, evaluation, system }: BasisZoneProps) {
       </table>
       {evaluation && (
         <p className="mt-10 text-schedule">
-          Proven: {evaluation.proof.arrangements} load arrangements, each solved by the force method and by
-          direct stiffness. Equilibrium within {small(evaluation.proof.equilibrium)}, compatibility within{' '}
+          Proven: {evaluation.proof.arrangements} load cases, each solved by the force method and by direct
+          stiffness; the {evaluation.patterning.arrangements} arrangements of the combinations are their sums.
+          Equilibrium within {small(evaluation.proof.equilibrium)}, compatibility within{' '}
           {small(evaluation.proof.compatibility)}, the two methods within {small(evaluation.proof.agreement)}{' '}
           of the largest value.
         </p>

@@ -25,6 +25,8 @@ export function ElevationZone({ live, system, notDrawn, onEdit }: ElevationZoneP
     () => shown && view && { dimensions: shown.instance.dimensions, loadNames: view.loadNames },
     [shown, view],
   );
+  const isLive = live.evaluation !== null;
+  const drawn = useMemo(() => (isLive ? view?.draw() : undefined), [isLive, view]);
   return (
     <section className="border-b border-ink">
       <div className="flex flex-wrap items-start gap-x-20 px-14 pt-9 max-md:px-(--pad) md:-mb-14">
@@ -50,7 +52,9 @@ export function ElevationZone({ live, system, notDrawn, onEdit }: ElevationZoneP
         <BeamResults
           beam={view.beam}
           instance={named}
-          solution={live.evaluation ? view.solution : null}
+          solution={drawn?.solution ?? null}
+          envelopes={drawn?.envelopes}
+          reactions={drawn?.reactions}
           system={system}
           quantities={QUANTITIES}
           depth={shown?.section?.depth}

@@ -1,5 +1,8 @@
+import type { ReactNode } from 'react';
 import { RichHtml } from '@/components/drawing/marks/RichHtml';
 import { ZoneHeading } from '@/components/ui/ZoneHeading';
+import type { ArrangementNamer } from '@/engine/combination';
+import type { Governing } from '@/engine/envelope';
 import type { Load } from '@/engine/model';
 import { letteredSupports } from '@/engine/model';
 import { formatFor, type UnitSystemName } from '@/engine/quantity';
@@ -68,6 +71,11 @@ export function LoadGroupsZone({ evaluation, system }: ZoneProps) {
   );
 }
 
+/** What gives a figure, or its range, in the second line of its cell. */
+const Under = ({ children }: { readonly children: ReactNode }) => (
+  <span className="block text-note font-normal text-ink-2">{children}</span>
+);
+
 /** Reactions of each group alone, so that the next member can combine them afresh, with the most and least. */
 export function ReactionsZone({ evaluation, system }: ZoneProps) {
   return (
@@ -99,23 +107,8 @@ export function ReactionsZone({ evaluation, system }: ZoneProps) {
               </tr>
             </thead>
             <tbody>
-              {reactionRows(evaluation).map(({ name, purpose, groups, total, most, least }) => (
-                <tr key={name}>
-                  <th scope="row">{name}</th>
-                  {groups.map(({ group, value }) => (
-                    <td key={group} className="figure">
-                      {formatFor(value, purpose, system)}
-                    </td>
-                  ))}
-                  <td className="figure">{formatFor(total, purpose, system)}</td>
-                  <td className="figure">{most === null ? '–' : formatFor(most, purpose, system)}</td>
-                  <td className="figure">
-                    {least === null ? '–' : formatFor(least, purpose, system)}
-                    {purpose === 'reaction' && (least ?? total) < -1e-6 && (
-                      <b className="ml-6 font-semibold text-ochre-ink">uplift</b>
-                    )}
-                  </td>
-                </tr>
+              {reactionRows(evaluation).map((row) => (
+                <ReactionRow key={row.name} row={row} system={system} />
               ))}
             </tbody>
           </table>
@@ -125,21 +118,83 @@ export function ReactionsZone({ evaluation, system }: ZoneProps) {
   );
 }
 
-function reactionRows({ beam, groups, total, strength }: MemberEvaluation) {
+interface ReactionRowProps {
+  readonly row: ReturnType<typeof reactionRows>[number];
+  readonly system: UnitSystemName;
+}
+
+function ReactionRow({ row, system }: ReactionRowProps) {
+  const { name, purpose, groups, total, most, least } = row;
+  const text = (value: number) => formatFor(value, purpose, system);
+  return (
+    <tr>
+      <th scope="row">{name}</th>
+      {groups.map(({ group, value, range }) => (
+        <td key={group} className="figure">
+          {text(value)}
+          {range && (
+            <Under>
+              {text(range.min)} to {text(range.max)}
+            </Under>
+          )}
+        </td>
+      ))}
+      <td className="figure">{text(total)}</td>
+      <td className="figure">
+        {most === null ? '–' : text(most.value)}
+        {most && <Under>{most.of}</Under>}
+      </td>
+      <td className="figure">
+        {least === null ? '–' : text(least.value)}
+        {purpose === 'reaction' && (least?.value ?? total) < -1e-6 && (
+          <b className="ml-6 font-semibold text-ochre-ink">uplift</b>
+        )}
+        {least && <Under>{least.of}</Under>}
+      </td>
+    </tr>
+  );
+}
+
+/** The most and the least of a group that acts only where adverse. */
+interface GroupRange {
+  readonly max: number;
+  readonly min: number;
+}
+
+function reactionRows({ beam, groups, groupReactions, total, strength, nameOf }: MemberEvaluation) {
   const letters = new Map(letteredSupports(beam).map(({ index, letter }) => [index, letter]));
   return beam.supports.flatMap((support, index) => {
     const row = (component: 'vertical' | 'moment', words: string) => {
-      const all = strength.map(({ solution }) => solution.reactions[index]?.[component] ?? 0);
+      const all = strength.flatMap(({ reactions }) => reactions[index] ?? []);
+      const most = all.map(({ max }) => max[component]);
+      const least = all.map(({ min }) => min[component]);
+      const rangeOf = (group: string): GroupRange | null => {
+        const own = groupReactions[index]?.[group]?.[component];
+        return typeof own === 'object' ? own : null;
+      };
       return {
         name: `${letters.get(index) ?? ''}, ${words}`,
         purpose: component === 'vertical' ? ('reaction' as const) : ('moment' as const),
         groups: groups.map(({ group, solution }) => ({
           group,
           value: solution.reactions[index]?.[component] ?? 0,
+          range: rangeOf(group),
         })),
         total: total.reactions[index]?.[component] ?? 0,
-        most: all.length > 0 ? Math.max(...all) : null,
-        least: all.length > 0 ? Math.min(...all) : null,
+        most:
+          most.length > 0
+            ? named(
+                most.reduce((a, b) => (b.value > a.value ? b : a)),
+                nameOf,
+              )
+            : null,
+        least:
+          least.length > 0
+            ? named(
+                least.reduce((a, b) => (b.value < a.value ? b : a)),
+                nameOf,
+              )
+            : null,
       };
     };
     return [
@@ -148,3 +203,8 @@ function reactionRows({ beam, groups, total, strength }: MemberEvaluation) {
     ];
   });
 }
+
+const named = (governing: Governing, nameOf: ArrangementNamer) => ({
+  value: governing.value,
+  of: nameOf(governing),
+});

@@ -118,6 +118,7 @@ function reasonNotToSave({ live, draft, isDirty, saving }: MemberBlockProps['wor
   if (!mayEdit) return 'Members are changed by engineers with access to the job.';
   if (live.faults.length > 0) return 'Not saved while inputs fail. Put them right above.';
   if (!draft.selfWeight && draft.selfWeightReason.trim() === '') return 'Say why the own weight is left out.';
+  if (!draft.patterns && draft.patternsReason.trim() === '') return 'Say why adverse patterns are left out.';
   if (saving.kind === 'saving') return 'Saving.';
   return isDirty ? undefined : 'Nothing to save.';
 }

@@ -9,7 +9,7 @@ import type { SaveMember, TriedView } from './member';
 import type { Pins } from './pins.server';
 import { type StoredResult, toStoredResult } from './result';
 
-export type Given = Pick<SaveMember, 'parameters' | 'self_weight' | 'redundants'>;
+export type Given = Pick<SaveMember, 'parameters' | 'self_weight' | 'patterns' | 'redundants'>;
 
 export interface Assessment extends TriedView {
   readonly result: StoredResult;
@@ -41,6 +41,7 @@ export function assessMember(pins: Pins, given: Given, system: UnitSystemName): 
     section: section && { values: section.row.values, material: section.material },
     criteria: criteria?.document ?? null,
     ownWeight: given.self_weight,
+    patterns: given.patterns,
     redundants: given.redundants ?? undefined,
   });
   if (!reading.ok)

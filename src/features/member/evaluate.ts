@@ -1,20 +1,7 @@
-import { prepareBeam, type Solution } from '@/engine/beam';
-import {
-  type Arrangement,
-  type Criteria,
-  checkMember,
-  type MemberChecks,
-  type ServiceArrangement,
-} from '@/engine/check';
-import {
-  actingCombinations,
-  factoredLoads,
-  groupsOf,
-  stillBeam,
-  supportsMove,
-} from '@/engine/combination';
+import { type Criteria, checkMember, type MemberChecks } from '@/engine/check';
+import type { SolvedCase } from '@/engine/envelope';
 import { SingularMatrix } from '@/engine/linear';
-import { type Beam, checkRedundants, type Load, type Redundant, readBeam } from '@/engine/model';
+import { type Beam, checkRedundants, type Redundant, readBeam } from '@/engine/model';
 import { isProven, proveSolution } from '@/engine/proof';
 import type { UnitSystemName } from '@/engine/quantity';
 import type { Material } from '@/engine/section';
@@ -29,6 +16,7 @@ import {
   type Template,
 } from '@/engine/template';
 import { type ResolvedSection, resolveSection, type SectionValues } from '@/features/section/resolve';
+import { type MemberSolution, solveMember } from './solve';
 
 /** Everything that a member's numbers follow from: what was typed, and the documents that it pins. */
 export type MemberInputs = {
@@ -40,6 +28,8 @@ export type MemberInputs = {
   readonly criteria: Criteria | null;
   /** The section's own weight acts unless it is switched off, with a reason that is printed. */
   readonly ownWeight: boolean;
+  /** The groups that the criteria say so act only where adverse, unless that is switched off, with a printed reason. */
+  readonly patterns: boolean;
   /** Instead of the template's own choice. */
   readonly redundants?: readonly Redundant[] | undefined;
 };
@@ -48,21 +38,15 @@ export type ProofLine = {
   readonly equilibrium: number;
   readonly compatibility: number;
   readonly agreement: number;
-  /** How many solved arrangements the worst is of. */
+  /** How many solved load cases the worst is of. */
   readonly arrangements: number;
   readonly proven: boolean;
 };
 
-export type MemberEvaluation = {
+export type MemberEvaluation = Omit<MemberSolution, 'solved'> & {
   readonly instance: Instance;
   readonly section: ResolvedSection | null;
   readonly beam: Beam;
-  /** All groups together, unfactored. */
-  readonly total: Solution;
-  /** Each group alone, unfactored; supports' own movements as a group of their own where there are any. */
-  readonly groups: readonly { readonly group: string; readonly solution: Solution }[];
-  readonly strength: readonly Arrangement[];
-  readonly service: readonly ServiceArrangement[];
   /** Null until both a section and criteria are chosen. */
   readonly checks: MemberChecks | null;
   readonly rules: readonly RuleOutcome[];
@@ -72,9 +56,6 @@ export type MemberEvaluation = {
 export type MemberReading =
   | { readonly ok: true; readonly evaluation: MemberEvaluation }
   | { readonly ok: false; readonly faults: readonly ParameterFault[] };
-
-/** The group of what the supports do by themselves. */
-export const MOVEMENTS = 'movements';
 
 const refused = (path: readonly (string | number)[], code: string, message: string): MemberReading => ({
   ok: false,
@@ -87,12 +68,12 @@ const inParameters = (faults: readonly ParameterFault[]): MemberReading => ({
 });
 
 /**
- * Solves and checks a member: each load group alone, all of them together, and every combination of the criteria as an
- * arrangement of its own, each proven by the second method. Pure: the browser shows while a value is dragged what the
- * server stores on saving. Refused with the path of each fault in the member's inputs.
+ * Solves and checks a member: each load group alone and all of them together, proven by the second method, and every
+ * combination of the criteria over all patterns as sums of them. Pure: the browser shows while a value is dragged what
+ * the server stores on saving. Refused with the path of each fault in the member's inputs.
  */
 export function evaluateMember(inputs: MemberInputs): MemberReading {
-  const { template, system, criteria } = inputs;
+  const { template } = inputs;
   const values = readParameters(template, inputs.parameters);
   if (!values.ok) return inParameters(values.faults);
   const resolution = inputs.section && resolveSection(inputs.section.values, inputs.section.material);
@@ -113,7 +94,7 @@ export function evaluateMember(inputs: MemberInputs): MemberReading {
   const inadmissible = choice && checkRedundants(beam, choice)[0];
   if (inadmissible) return refused(['redundants'], inadmissible.code, inadmissible.message);
   try {
-    const evaluation = evaluateBeam(instance, beam, section, criteria, template, system);
+    const evaluation = evaluateBeam(instance, beam, section, inputs);
     const broken = evaluation.rules.filter(
       ({ state, severity }) => state === 'broken' && severity === 'block',
     );
@@ -129,64 +110,36 @@ export function evaluateMember(inputs: MemberInputs): MemberReading {
 const UNSOLVABLE =
   'There is no result within the digits that are carried. Look for points that almost coincide, for stiffnesses that are far apart, and for redundants that repeat one another.';
 
+/** Said with the result, as what the criteria themselves leave out is. */
+const SWITCHED_OFF =
+  'Adverse patterns of loads: switched off for this member, every group stands on its whole length';
+
 function evaluateBeam(
   instance: Instance,
   beam: Beam,
   section: ResolvedSection | null,
-  criteria: Criteria | null,
-  template: Template,
-  system: UnitSystemName,
+  { template, criteria, system, patterns }: MemberInputs,
 ): MemberEvaluation {
-  const prepared = prepareBeam(beam, instance.beam.redundants);
-  const proofs: { beam: Beam; solution: Solution }[] = [];
-  const solve = (loads: readonly Load[], movements: boolean): Solution => {
-    const solution = prepared.solve(loads, { movements });
-    proofs.push({ beam: { ...(movements ? beam : stillBeam(beam)), loads }, solution });
-    return solution;
-  };
-  const total = solve(beam.loads, true);
-  const present = groupsOf(beam.loads);
-  const groups = [
-    ...present.map((group) => ({
-      group,
-      solution: solve(
-        beam.loads.filter((load) => load.group === group),
-        false,
-      ),
-    })),
-    ...(supportsMove(beam) ? [{ group: MOVEMENTS, solution: solve([], true) }] : []),
-  ];
-  const arrangementsOf = (combinations: Criteria['strength']['combinations']): Arrangement[] =>
-    actingCombinations(combinations, present, criteria?.letters).map((combination) => ({
-      combination,
-      solution: solve(factoredLoads(beam.loads, combination), true),
-    }));
-  const strength = arrangementsOf(criteria?.strength.combinations ?? []);
-  const service = (criteria?.deflection ?? []).flatMap((limit): ServiceArrangement[] =>
-    arrangementsOf([limit.combination]).map(({ combination, solution }) => ({
-      limit: { ...limit, combination },
-      solution,
-    })),
-  );
+  const { solved, ...solution } = solveMember(beam, instance.beam.redundants, criteria, patterns);
+  const { total, strength, service, superposed, nameOf } = solution;
+  const limits = service.map(({ limit }) => limit);
+  const judged = { beam, superposed, strength, limits, nameOf, system };
+  const checks = section && criteria ? checkMember({ ...judged, section: section.elastic, criteria }) : null;
+  const isSwitchedOff = !patterns && criteria?.patterns?.some(({ where_adverse }) => where_adverse);
   return {
+    ...solution,
     instance,
     section,
     beam,
-    total,
-    groups,
-    strength,
-    service,
     checks:
-      section && criteria
-        ? checkMember({ beam, section: section.elastic, criteria, strength, service, system })
-        : null,
+      checks && isSwitchedOff ? { ...checks, notChecked: [SWITCHED_OFF, ...checks.notChecked] } : checks,
     rules: judgeRules(template, instance.scope, { depth: section?.depth, ga: null, solution: total }, system),
-    proof: worstOf(proofs),
+    proof: worstOf(solved),
   };
 }
 
-function worstOf(proofs: readonly { beam: Beam; solution: Solution }[]): ProofLine {
-  const each = proofs.map(({ beam, solution }) => ({ beam, proof: proveSolution(beam, solution) }));
+function worstOf(solved: readonly SolvedCase[]): ProofLine {
+  const each = solved.map(({ beam, solution }) => ({ beam, proof: proveSolution(beam, solution) }));
   const worst = (kind: 'equilibrium' | 'compatibility' | 'agreement') =>
     Math.max(...each.map(({ proof }) => proof[kind]));
   return {

@@ -135,6 +135,7 @@ export function tryMember(actor: Actor, number: string, mark: string, body: TryM
     const given = {
       parameters: { ...row.parameters, ...body.parameters },
       self_weight: body.self_weight ?? row.settings.self_weight,
+      patterns: body.patterns ?? row.settings.patterns,
       redundants: body.redundants === undefined ? row.settings.redundants : body.redundants,
     };
     return assessMember(pins, given, job.unitSystem);
@@ -147,11 +148,12 @@ const whole = ({ parameters }: Template, given: SaveMember['parameters']): SaveM
   ...given,
 });
 
-const toGiven = ({ parameters, self_weight, redundants }: Omit<NewMember, 'mark' | 'template'>) => ({
+const toGiven = ({
   parameters,
   self_weight,
+  patterns,
   redundants,
-});
+}: Omit<NewMember, 'mark' | 'template'>) => ({ parameters, self_weight, patterns, redundants });
 
 function toColumns(
   body: Omit<NewMember, 'mark' | 'template'> & { readonly reason: string },
@@ -162,6 +164,8 @@ function toColumns(
   const settings: Settings = {
     self_weight: body.self_weight,
     self_weight_reason: body.self_weight_reason,
+    patterns: body.patterns,
+    patterns_reason: body.patterns_reason,
     redundants: body.redundants,
     reason: body.reason,
   };
@@ -232,6 +236,8 @@ const traceOf = ({
   parameters: view.parameters,
   self_weight: view.self_weight,
   self_weight_reason: view.self_weight_reason,
+  patterns: view.patterns,
+  patterns_reason: view.patterns_reason,
   redundants: view.redundants,
   fingerprint: view.fingerprint,
 });

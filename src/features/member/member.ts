@@ -24,6 +24,10 @@ const inputs = {
   self_weight: z.boolean(),
   /** Why the section's own weight is left out; printed on the sheet. */
   self_weight_reason: line(300),
+  /** Whether the groups that the criteria say so act only where adverse. */
+  patterns: z.boolean(),
+  /** Why they stand on the whole length instead; printed on the sheet. */
+  patterns_reason: line(300),
   /** Instead of the template's own choice. */
   redundants: z.array(Redundant).max(40).nullable(),
 };
@@ -34,13 +38,22 @@ const withDefaults = {
   criteria: inputs.criteria.default(null),
   self_weight: inputs.self_weight.default(true),
   self_weight_reason: inputs.self_weight_reason.default(''),
+  patterns: inputs.patterns.default(true),
+  patterns_reason: inputs.patterns_reason.default(''),
   redundants: inputs.redundants.default(null),
 };
 
 const title = line(120);
 const purpose = line(500);
 
-type Reasoned = { self_weight: boolean; self_weight_reason: string; status?: string; reason?: string };
+type Reasoned = {
+  self_weight: boolean;
+  self_weight_reason: string;
+  patterns: boolean;
+  patterns_reason: string;
+  status?: string;
+  reason?: string;
+};
 
 /** What is left out or taken away needs a reason, which outlives whoever knew it. */
 function askReasons({ value, issues }: z.core.ParsePayload<Reasoned>): void {
@@ -48,6 +61,8 @@ function askReasons({ value, issues }: z.core.ParsePayload<Reasoned>): void {
     issues.push({ code: 'custom', input: value, path: [field], message, params: { code: 'required' } });
   if (!value.self_weight && value.self_weight_reason === '')
     ask('self_weight_reason', 'Say why the own weight is left out. The reason is printed on the sheet.');
+  if (!value.patterns && value.patterns_reason === '')
+    ask('patterns_reason', 'Say why adverse patterns are left out. The reason is printed on the sheet.');
   if (value.status === 'removed' && value.reason === '')
     ask('reason', 'Say why the member is removed. Its mark stays taken.');
 }

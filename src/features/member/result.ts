@@ -1,13 +1,14 @@
 import { z } from 'zod';
-import type { Reaction, Solution } from '@/engine/beam';
+import type { Solution } from '@/engine/beam';
 import type { CheckRow, DeflectionLimit, Finding } from '@/engine/check';
-import type { Combination } from '@/engine/combination';
 import type { DerivationStep } from '@/engine/derivation';
+import type { CombinationEnvelope, EnvelopeReaction, GroupReaction } from '@/engine/envelope';
 import type { Beam } from '@/engine/model';
 import { type Piecewise, piecewise } from '@/engine/polynomial';
 import type { Dimensioned, NamedLoad, RuleOutcome } from '@/engine/template';
 import type { ResolvedSection } from '@/features/section/resolve';
 import type { MemberEvaluation, ProofLine } from './evaluate';
+import type { Patterning } from './solve';
 
 type StoredCurve = { breaks: number[]; degree: number; coefficients: number[] };
 type Quantity = keyof Solution['diagrams'];
@@ -17,16 +18,15 @@ export type StoredSolution = Omit<Solution, 'diagrams'> & {
   readonly diagrams: Record<Quantity, StoredCurve>;
 };
 
-/** What a combination came to, without its diagrams. */
-type StoredArrangement = {
-  readonly combination: Combination;
-  readonly reactions: readonly Reaction[];
-  readonly extremes: Solution['extremes'];
+/** What a combination came to over all patterns, without its diagrams; the groups' own reactions stand with the groups. */
+type StoredEnvelope = Pick<CombinationEnvelope, 'combination' | 'extremes'> & {
+  readonly reactions: readonly Omit<EnvelopeReaction, 'groups'>[];
 };
 
 /** What the server found for a member, whole: a sheet is printed from it alone. SI, the engine's signs. */
-type MemberResult = {
+export type MemberResult = {
   readonly kind: 'result';
+  readonly schema_version: 2;
   readonly beam: Beam;
   readonly ei: number;
   readonly section: ResolvedSection | null;
@@ -34,8 +34,11 @@ type MemberResult = {
   readonly load_names: readonly NamedLoad[];
   readonly total: StoredSolution;
   readonly groups: readonly { readonly group: string; readonly solution: StoredSolution }[];
-  readonly strength: readonly StoredArrangement[];
-  readonly service: readonly (StoredArrangement & { readonly limit: DeflectionLimit })[];
+  /** Support by support, of every group: of a patterned one the most and the least. */
+  readonly group_reactions: readonly Readonly<Record<string, GroupReaction>>[];
+  readonly strength: readonly StoredEnvelope[];
+  readonly service: readonly (StoredEnvelope & { readonly limit: DeflectionLimit })[];
+  readonly patterning: Patterning;
   readonly checks: {
     readonly rows: readonly CheckRow[];
     readonly findings: readonly Finding[];
@@ -95,9 +98,15 @@ export function drawnSolution({ diagrams, ...rest }: StoredSolution): Solution {
   };
 }
 
+const toEnvelope = ({ combination, extremes, reactions }: CombinationEnvelope): StoredEnvelope => ({
+  combination,
+  extremes,
+  reactions: reactions.map(({ at, max, min }) => ({ at, max, min })),
+});
+
 /** What is stored of an evaluation; of one that is not proven, only that it is not. */
 export function toStoredResult(evaluation: MemberEvaluation): StoredResult {
-  const { instance, section, beam, total, groups, strength, service, checks, rules, proof } = evaluation;
+  const { instance, section, beam, total, groups, checks, rules, proof, patterning } = evaluation;
   if (!proof.proven)
     return {
       kind: 'fault',
@@ -107,6 +116,7 @@ export function toStoredResult(evaluation: MemberEvaluation): StoredResult {
     };
   return {
     kind: 'result',
+    schema_version: 2,
     beam,
     ei: instance.ei,
     section,
@@ -114,17 +124,10 @@ export function toStoredResult(evaluation: MemberEvaluation): StoredResult {
     load_names: instance.loadNames,
     total: toSolution(total),
     groups: groups.map(({ group, solution }) => ({ group, solution: toSolution(solution) })),
-    strength: strength.map(({ combination, solution: { reactions, extremes } }) => ({
-      combination,
-      reactions,
-      extremes,
-    })),
-    service: service.map(({ limit, solution: { reactions, extremes } }) => ({
-      limit,
-      combination: limit.combination,
-      reactions,
-      extremes,
-    })),
+    group_reactions: evaluation.groupReactions,
+    strength: evaluation.strength.map(toEnvelope),
+    service: evaluation.service.map((envelope) => ({ ...toEnvelope(envelope), limit: envelope.limit })),
+    patterning,
     checks: checks && {
       rows: checks.rows,
       findings: checks.findings,

@@ -7,8 +7,9 @@ import { section } from '@/db/schema/section';
 import { type LibraryRevision, revisionsById } from '@/features/review/library.server';
 import { notFound } from '@/lib/app-error';
 import { type MemberItem, type MemberView, SaveMember } from './member';
+import { readResult } from './migrate';
 import { loadPins, newerEdition, type Pins, toPin } from './pins.server';
-import { governingOf, storedResult } from './result';
+import { governingOf } from './result';
 
 const creator = aliasedTable(person, 'creator');
 const changer = aliasedTable(person, 'changer');
@@ -19,11 +20,12 @@ const stored = {
   settings: z.strictObject({
     self_weight: z.boolean(),
     self_weight_reason: z.string(),
+    patterns: z.boolean().default(true),
+    patterns_reason: z.string().default(''),
     redundants: SaveMember.shape.redundants,
     /** Why the member was removed. */
     reason: z.string(),
   }),
-  result: storedResult.nullable(),
 };
 export type Settings = z.output<typeof stored.settings>;
 
@@ -57,7 +59,7 @@ const read = (row: Selected) => ({
   ...row,
   parameters: stored.parameters.parse(row.parameters),
   settings: stored.settings.parse(row.settings),
-  result: stored.result.parse(row.result),
+  result: row.result === null ? null : readResult(row.result),
 });
 
 /** A member's row with what its documents say read, and its people by name. */

@@ -28,6 +28,7 @@ const inputs = (change: Partial<MemberInputs> = {}): MemberInputs => ({
   section: { values: IPE_300, material: S355 },
   criteria: criteriaDocument.parse(criteria),
   ownWeight: true,
+  patterns: true,
   ...change,
 });
 
@@ -82,12 +83,42 @@ describe('the drawing shows', () => {
       ['G, permanent', 2],
       ['S, snow', 1],
     ]);
-    const factored = views.find(({ name }) => name === 'Strength: 1.35 G + 1.5 S');
+    const factored = views.find(({ name }) => name === 'Strength: 1.35 G + 1.5 S, all spans loaded');
     expect(factored?.beam.loads.map((load) => load.kind === 'line' && load.w0)).toEqual([
       1.35 * 5520,
       1.5 * 3600,
       expect.closeTo(1.35 * 42.2 * 9.80665, 9),
     ]);
+  });
+});
+
+describe('of a member whose snow acts only where adverse, the drawing shows', () => {
+  const evaluation = evaluated();
+  const views = stripViews(evaluation);
+  const named = (name: string) => {
+    const view = views.find((one) => one.name === name);
+    if (!view) throw new Error(`There is no view “${name}”`);
+    return view;
+  };
+
+  test('the loads that govern a check, with the snow on the span alone', () => {
+    const { beam, draw } = named('Bending stress: 1.35 G + 1.5 S, span A–B loaded');
+    const snow = beam.loads.filter(({ group }) => group === 'S');
+    expect(snow).toMatchObject([{ from: 0, to: 6, w0: 1.5 * 3600 }]);
+    const bending = evaluation.checks?.rows.find(({ kind }) => kind === 'bending');
+    const { moment } = draw().solution.extremes;
+    expect(Math.max(moment.max.value, -moment.min.value) / 557e-6).toBeCloseTo(bending?.demand ?? 0, 0);
+  });
+
+  test('the envelope, with the loads that give each peak and the range of the reactions', () => {
+    const { envelopes, reactions } = named('Envelope of all combinations').draw();
+    const hogging = envelopes?.moment?.peaks.find(({ x }) => x === 0);
+    expect(hogging?.of).toBe('1.35 G + 1.5 S, span A–B loaded');
+    const worst = Math.min(...evaluation.strength.map(({ extremes }) => extremes.moment.min.value));
+    expect(hogging?.value).toBeCloseTo(worst, 6);
+    expect(envelopes?.deflection?.note).toBe('service');
+    const { vertical, least } = reactions?.[1] ?? { vertical: 0, least: { vertical: 0 } };
+    expect(vertical).toBeGreaterThan(least.vertical);
   });
 });
 
@@ -162,6 +193,8 @@ describe('two versions of a member', () => {
     criteria: null,
     self_weight: true,
     self_weight_reason: '',
+    patterns: true,
+    patterns_reason: '',
     redundants: null,
   };
   const theirs = { ...body, title: 'Hall canopy', parameters: { ...body.parameters, L: '7 m' } };

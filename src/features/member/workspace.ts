@@ -49,6 +49,8 @@ export interface Draft {
   readonly criteria: string;
   readonly selfWeight: boolean;
   readonly selfWeightReason: string;
+  readonly patterns: boolean;
+  readonly patternsReason: string;
   readonly redundants: readonly Redundant[] | null;
 }
 
@@ -68,6 +70,8 @@ export const toDraft = (
   criteria: member.criteria?.slug ?? '',
   selfWeight: member.self_weight,
   selfWeightReason: member.self_weight_reason,
+  patterns: member.patterns,
+  patternsReason: member.patterns_reason,
   redundants: member.redundants,
 });
 
@@ -94,6 +98,8 @@ export const toBody = (draft: Draft, template: Template, { status, reason }: Sta
   criteria: draft.criteria || null,
   self_weight: draft.selfWeight,
   self_weight_reason: draft.selfWeightReason.trim(),
+  patterns: draft.patterns,
+  patterns_reason: draft.patternsReason.trim(),
   redundants: draft.redundants ? [...draft.redundants] : null,
 });
 
@@ -110,6 +116,7 @@ export function toInputs(
     section: draft.section && material ? { values: draft.section.values, material } : null,
     criteria: criteria.find(({ slug }) => slug === draft.criteria)?.document ?? null,
     ownWeight: draft.selfWeight,
+    patterns: draft.patterns,
     redundants: draft.redundants ?? undefined,
   };
 }
@@ -142,6 +149,8 @@ const NAMES: Readonly<Record<string, string>> = {
   template: 'Template',
   self_weight: 'Own weight',
   self_weight_reason: 'Own weight left out because',
+  patterns: 'Adverse patterns',
+  patterns_reason: 'Adverse patterns left out because',
   redundants: 'Redundants',
 };
 
@@ -182,6 +191,8 @@ export const bodyOf = (member: MemberView): SaveMember => ({
   criteria: member.criteria?.slug ?? null,
   self_weight: member.self_weight,
   self_weight_reason: member.self_weight_reason,
+  patterns: member.patterns,
+  patterns_reason: member.patterns_reason,
   redundants: member.redundants,
 });
 

@@ -64,11 +64,15 @@ function blocksOf(row: MemberRow, pins: Pins, job: JobRow, cautions: readonly Sh
     system: job.unitSystem,
     parameters,
     ownWeight: { acts: settings.self_weight, reason: settings.self_weight_reason },
+    patterns: { act: settings.patterns, reason: settings.patterns_reason },
     section: sectionOf(pins),
     criteria: criteria && {
       name: criteria.name,
       revision: criteria.number,
       basis: criteria.document.strength.basis,
+      combinations: criteria.document.strength.combinations,
+      letters: criteria.document.letters ?? {},
+      patterns: criteria.document.patterns ?? [],
     },
     result: { ...result, total: drawnSolution(result.total) },
   });

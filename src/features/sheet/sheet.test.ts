@@ -29,10 +29,11 @@ interface Asked {
   readonly parameters: Readonly<Record<string, unknown>>;
   readonly system?: UnitSystemName;
   readonly isChecked?: boolean;
+  readonly patterns?: boolean;
 }
 
 /** The sheet of a member as it would be stored: through JSON, as the database gives it back. */
-function sheetOf({ slug = SLUG, parameters, system = 'metric', isChecked = false }: Asked) {
+function sheetOf({ slug = SLUG, parameters, system = 'metric', isChecked = false, patterns = true }: Asked) {
   const template = shippedTemplate(slug);
   const material = S355;
   if (!material) throw new Error('S355 is shipped');
@@ -43,6 +44,7 @@ function sheetOf({ slug = SLUG, parameters, system = 'metric', isChecked = false
     section: isChecked ? { values: IPE_270, material } : null,
     criteria: isChecked ? CRITERIA : null,
     ownWeight: isChecked,
+    patterns,
   });
   if (!reading.ok) throw new Error(JSON.stringify(reading.faults));
   const { beam, total, instance } = reading.evaluation;
@@ -70,7 +72,17 @@ function sheetOf({ slug = SLUG, parameters, system = 'metric', isChecked = false
           computed: ['i_major_cm4'],
         }
       : null,
-    criteria: isChecked ? { name: CRITERIA.name, revision: 1, basis: CRITERIA.strength.basis } : null,
+    patterns: { act: patterns, reason: 'Stored goods stand on both spans' },
+    criteria: isChecked
+      ? {
+          name: CRITERIA.name,
+          revision: 1,
+          basis: CRITERIA.strength.basis,
+          combinations: CRITERIA.strength.combinations,
+          letters: {},
+          patterns: CRITERIA.patterns ?? [],
+        }
+      : null,
     result: { ...result, total: drawnSolution(result.total) },
     cautions: [{ title: 'Stop and ask', text: 'Stop and ask.', version: 3 }],
   };
@@ -127,17 +139,18 @@ describe('a sheet', () => {
     isChecked: true,
   });
 
-  test('goes through its nine sections in order', () => {
+  test('goes through its ten sections in order', () => {
     expect(all(blocks, 'heading').map(({ number, title }) => `${number} ${title}`)).toEqual([
       '1 What this sheet covers',
       '2 Givens',
-      '3 Elevation and diagrams: all loads together, unfactored',
-      '4 Derivation',
-      '5 Results',
-      '6 Section properties used',
-      '7 Checks, governing first',
-      '8 Reactions to hand on',
-      '9 Cautions',
+      '3 Combinations and patterns',
+      '4 Elevation and diagrams: all loads together, unfactored',
+      '5 Derivation',
+      '6 Results',
+      '7 Section properties used',
+      '8 Checks, governing first',
+      '9 Reactions to hand on',
+      '10 Cautions',
     ]);
   });
 
@@ -153,9 +166,60 @@ describe('a sheet', () => {
 
   test('gives reactions by group, which add up to those of all together within their rounding', () => {
     for (const [, , ...values] of textsOf(blocks, 'Reactions by group, unfactored')) {
-      const [g = Number.NaN, s = Number.NaN, together = Number.NaN] = values.map(Number);
+      const [g = Number.NaN, s = Number.NaN, most = Number.NaN, least = Number.NaN, together = Number.NaN] =
+        values.map((value) => Number(value.replace('−', '-').replace('\u00a0uplift', '')));
       expect(Math.abs(g + s - together)).toBeLessThan(0.11);
+      expect(Math.abs(most + least - s)).toBeLessThan(0.16);
     }
+  });
+
+  test('lists how the groups act, the combinations run with their arrangements, and those not run', () => {
+    const groups = textsOf(blocks, 'Groups');
+    expect(groups.map(([group, acts]) => [group, acts])).toEqual([
+      ['G, permanent', 'On its whole length'],
+      ['S, snow', 'On each span and overhang where adverse'],
+    ]);
+    expect(groups[1]?.[2]).toMatch(/fixed action \(EN 1991-1-3, section 2, from memory\)$/);
+    const run = textsOf(blocks, 'Combinations run');
+    expect(run).toContainEqual(['Strength', '1.35 G', '1']);
+    expect(run).toContainEqual(['Strength', '1.35 G + 1.5 S', '4']);
+    expect(run).toContainEqual(['Total load', 'G + 0.5 S', '4']);
+    const idle = textsOf(blocks, 'Combinations not run');
+    expect(idle).toContainEqual(['1.35 G + 1.5 Q + 0.75 S', 'The same as 1.35 G + 0.75 S here']);
+    const strength = run.filter(([purpose]) => purpose === 'Strength');
+    expect(strength.length + idle.length).toBe(CRITERIA.strength.combinations.length);
+  });
+
+  // M_A = −wL²/8 + wa²/4 of what acts everywhere and −wL²/8 of what stands on the span alone, by the three-moment equation.
+  test('names the loads that govern: snow on the span alone hogs most at the fixed end', () => {
+    const g = 5.2 + (36.1 * 9.80665) / 1000;
+    const moment = 1.35 * ((g * 6 ** 2) / 8 - (g * 1.8 ** 2) / 4) + (1.5 * 3.6 * 6 ** 2) / 8;
+    const hogging = textsOf(blocks, 'Governing loads').find(([title]) => title === 'Hogging');
+    expect(hogging).toEqual([
+      'Hogging',
+      `−${moment.toFixed(1)}`,
+      'kNm',
+      '0.000',
+      '1.35 G + 1.5 S, span A–B loaded',
+    ]);
+    const [bending] = all(blocks, 'checks')[0]?.rows.filter(({ title }) => title === 'Bending stress') ?? [];
+    expect(bending?.place).toBe('at A, 1.35 G + 1.5 S, span A–B loaded');
+  });
+
+  test('prints why patterns are switched off, and that they are not checked', () => {
+    const off = sheetOf({
+      parameters: { L: '6 m', a: '1.8 m', w: { G: '5.2 kN/m', S: '3.6 kN/m' } },
+      isChecked: true,
+      patterns: false,
+    });
+    expect(textsOf(off, 'Groups')[1]).toEqual([
+      'S, snow',
+      'On its whole length',
+      'Patterns are switched off: Stored goods stand on both spans',
+    ]);
+    expect(textsOf(off, 'Combinations run')).toContainEqual(['Strength', '1.35 G + 1.5 S', '1']);
+    expect(all(off, 'list')[0]?.items[0]).toMatch(/^Adverse patterns of loads: switched off/);
+    expect(JSON.stringify(off)).not.toContain('span A–B loaded');
   });
 
   test('puts the governing check first, and says what was not checked', () => {

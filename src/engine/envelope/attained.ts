@@ -1,0 +1,88 @@
+import type { Cases, Sense } from './cases';
+import { type Arrangement, actingFactors, type Curves, dot } from './curves';
+import { horner, UnitRoots } from './roots';
+
+/** Values nearer to an extreme than this part of the largest magnitude attain it, as in a solution's own extremes. */
+const TIE = 1e-9;
+/** What varies by less than this part of the largest magnitude varies by rounding only. */
+const ROUNDING = 1e-13;
+/** Two positions nearer than this part of the beam are one: a turning point found beside a break is the break. */
+const COINCIDENT = 1e-9;
+
+/** Where one arrangement attains a value: at ends of pieces and turning points, ascending; of a constant piece its ends. */
+export class AttainedPlaces {
+  private readonly roots = new UnitRoots();
+  private readonly sum: Float64Array;
+  private readonly slope: Float64Array;
+
+  constructor(
+    private readonly curves: Curves,
+    private readonly cases: Cases,
+    /** The largest magnitude of the quantity. */
+    private readonly size: number,
+  ) {
+    this.sum = new Float64Array(curves.degree + 1);
+    this.slope = new Float64Array(curves.degree + 1);
+  }
+
+  /** The positions where sense · the arrangement's curve comes to `value`. */
+  find(arrangement: Arrangement, sense: Sense, value: number): number[] {
+    const { breaks } = this.curves;
+    const factors = actingFactors(this.cases, arrangement);
+    const least = value - TIE * this.size;
+    const at: number[] = [];
+    for (let k = 0; k + 1 < breaks.length; k++) {
+      if (!this.reaches(k, factors, sense, least)) continue;
+      for (const t of this.placesIn(k, factors, sense, least)) this.add(at, k, t);
+    }
+    return at;
+  }
+
+  /** Whether the bounds of a piece let the arrangement come to `least` there. */
+  private reaches(k: number, factors: Float64Array, sense: Sense, least: number): boolean {
+    const { degree, count, control } = this.curves;
+    for (let j = 0; j <= 2 * degree; j++) {
+      if (sense * dot(factors, control, (k * (2 * degree + 1) + j) * count) >= least) return true;
+    }
+    return false;
+  }
+
+  private placesIn(k: number, factors: Float64Array, sense: Sense, least: number): number[] {
+    const { degree, count, power } = this.curves;
+    const { sum, slope } = this;
+    for (let j = 0; j <= degree; j++) {
+      sum[j] = sense * dot(factors, power, (k * (degree + 1) + j) * count);
+      if (j > 0) slope[j - 1] = sum[j]! * j;
+    }
+    const turns = degree > 1 ? this.roots.find(slope, degree - 1) : 0;
+    return this.distinct(this.roots.roots.subarray(0, turns)).filter((t) => horner(sum, degree, t) >= least);
+  }
+
+  /**
+   * The ends, and the turning points that differ from what is beside them. A piece that levels out towards its end has
+   * a multiple root of its slope there, which rounding moves: by 1e-8 of the piece where it is double, 1e-5 where triple.
+   */
+  private distinct(turns: Float64Array): number[] {
+    const { degree } = this.curves;
+    const rounding = ROUNDING * this.size;
+    const valueAt = (t: number) => horner(this.sum, degree, t);
+    const kept = [0];
+    for (const t of turns) if (Math.abs(valueAt(t) - valueAt(kept.at(-1)!)) > rounding) kept.push(t);
+    while (kept.length > 1 && Math.abs(valueAt(kept.at(-1)!) - valueAt(1)) <= rounding) kept.pop();
+    return [...kept, 1];
+  }
+
+  /** Without repeats: breaks as they are, turning points only where no other position is so near. */
+  private add(at: number[], k: number, t: number): void {
+    const { breaks } = this.curves;
+    const [from, to] = [breaks[k]!, breaks[k + 1]!];
+    const x = t === 0 ? from : t === 1 ? to : from + t * (to - from);
+    const last = at.at(-1);
+    const isBreak = t === 0 || t === 1;
+    if (last === undefined || x - last > COINCIDENT * (breaks.at(-1)! - breaks[0]!)) at.push(x);
+    else if (isBreak && x !== last) {
+      if (breaks.includes(last)) at.push(x);
+      else at[at.length - 1] = x;
+    }
+  }
+}

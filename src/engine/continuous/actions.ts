@@ -5,12 +5,15 @@ import type { Geometry } from './geometry';
 export function applyLoads(geometry: Geometry, loads: readonly Load[]): void {
   clear(geometry);
   const { piece } = geometry;
+  geometry.turned = geometry.holds;
   for (let i = 0; i < loads.length; i++) {
     const load = loads[i]!;
     if (load.kind === 'line') spread(geometry, load.from, load.to, load.w0, load.w1);
     else if (load.kind === 'point') piece[geometry.pointAt(load.at)]!.force += load.p;
-    else if (load.kind === 'couple') piece[geometry.pointAt(load.at)]!.couple += load.m;
-    else bend(geometry, load.from, load.to, load.kappa);
+    else if (load.kind === 'couple') {
+      piece[geometry.pointAt(load.at)]!.couple += load.m;
+      geometry.turned = true;
+    } else bend(geometry, load.from, load.to, load.kappa);
   }
 }
 

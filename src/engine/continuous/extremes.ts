@@ -41,13 +41,13 @@ export class ExtremeFinder {
   /** Places where θ' turns, and where θ does. */
   private readonly few = new Float64Array(2);
   private readonly turns = new Float64Array(3);
-  private readonly stretch = new Float64Array(2);
+  private readonly stretch = new Float64Array(4);
 
   find(geometry: Geometry): void {
-    compareEnds(geometry, this.shear, 0);
-    compareEnds(geometry, this.moment, 1);
-    compareEnds(geometry, this.slope, 2);
-    compareEnds(geometry, this.deflection, 3);
+    compareEnds(geometry, this.shear, 0, 4);
+    compareEnds(geometry, this.moment, 1, geometry.turned ? 4 : 8);
+    compareEnds(geometry, this.slope, 2, geometry.shears ? 4 : 8);
+    compareEnds(geometry, this.deflection, 3, 8);
     this.searchPieces(geometry);
   }
 
@@ -65,18 +65,16 @@ export class ExtremeFinder {
 
   /**
    * A piece whose load does not vary: takes in the crest of M, where V = 0; answers whether bounds show that θ and v have
-   * no new extreme inside. Turned over where the load acts upward, so that q = θ' is a parabola open below.
+   * no new extreme inside. They hold under a downward load, where q = θ' is a parabola open below:
    *
    * Next to an end where q < 0, q lies above the chord to its crest: up to its zero θ falls by q₀² a/(2(crest − q₀)) at
    * most. It lies below its tangent: a slope θ₀ > 0 with θ₀ · 2q'₀ ≤ q₀² is gone by 2θ₀/|q₀|, so that v rises by 2θ₀²/|q₀|
    * at most, and rises nowhere else. Where q > 0, v stays above the parabola of the largest q over its ends.
    */
   private isSettled(piece: Piece, states: Float64Array, i: number): boolean {
-    const { from, length: h, bending, shearing, start, curvature } = piece;
+    const { from, length: h, bending: b, shearing, start, curvature } = piece;
     const { slope, deflection } = this;
-    const sense = start < 0 ? -1 : 1;
-    const b = sense * bending;
-    const kappa = sense * (curvature + shearing * start);
+    const kappa = curvature + shearing * start;
     const V = states[i]!;
     const M = states[i + 1]!;
     const endV = states[i + 4]!;
@@ -95,25 +93,23 @@ export class ExtremeFinder {
       fromLeft = s;
       fromRight = h - s;
     }
-    const v = sense * states[i + 3]!;
-    const w = sense * states[i + 7]!;
-    const top = sense > 0 ? deflection.max : -deflection.min;
+    if (start < 0) return false;
+    const v = states[i + 3]!;
+    const w = states[i + 7]!;
     if (left < 0) {
-      const t = sense * states[i + 2]!;
-      const least = sense > 0 ? slope.min : -slope.max;
-      if (crestOfLeft > 0 && left * left * fromLeft > 2 * (t - least) * (crestOfLeft - left)) return false;
-      if (t > 0 && (2 * t * b * V > left * left || 2 * t * t > (v - top) * left)) return false;
+      const t = states[i + 2]!;
+      const square = left * left;
+      if (crestOfLeft > 0 && square * fromLeft > 2 * (t - slope.min) * (crestOfLeft - left)) return false;
+      if (t > 0 && (2 * t * b * V > square || 2 * t * t > (v - deflection.max) * left)) return false;
     }
     if (right < 0) {
-      const u = sense * states[i + 6]!;
-      const most = sense > 0 ? slope.max : -slope.min;
-      if (crestOfRight > 0 && right * right * fromRight > 2 * (most - u) * (crestOfRight - right))
-        return false;
-      if (u < 0 && (2 * u * b * endV > right * right || 2 * u * u > (w - top) * right)) return false;
+      const u = states[i + 6]!;
+      const square = right * right;
+      if (crestOfRight > 0 && square * fromRight > 2 * (slope.max - u) * (crestOfRight - right)) return false;
+      if (u < 0 && (2 * u * b * endV > square || 2 * u * u > (w - deflection.max) * right)) return false;
     }
     const highest = crestOfLeft > crestOfRight ? crestOfLeft : crestOfRight;
-    const bottom = sense > 0 ? deflection.min : -deflection.max;
-    return highest <= 0 || (v < w ? v : w) - (highest * h * h) / 8 >= bottom;
+    return highest <= 0 || (v < w ? v : w) - (highest * h * h) / 8 >= deflection.min;
   }
 
   /** V and M where the load varies. */
@@ -132,99 +128,88 @@ export class ExtremeFinder {
 
   /** θ where θ' = 0, and v where θ = 0, on a piece whose load does not vary. */
   private searchUniform(piece: Piece, states: Float64Array, i: number): void {
-    const { from, length: h, bending: b, shearing: g, start, curvature } = piece;
-    const { slope } = this;
-    const t0 = states[i + 2]!;
-    const t1 = b * states[i + 1]! + curvature + g * start;
+    const { length: h, bending: b, shearing, start, curvature } = piece;
+    const { theta, turns } = this;
+    const t1 = b * states[i + 1]! + curvature + shearing * start;
     const t2 = (b * states[i]!) / 2;
     const t3 = b * start * -SIXTH;
-    let first = h;
-    let second = h;
-    let atFirst = states[i + 6]!;
-    let atSecond = atFirst;
-    const discriminant = t2 * t2 - 3 * t1 * t3;
-    if (discriminant > 0) {
-      const q = t2 < 0 ? Math.sqrt(discriminant) - t2 : -t2 - Math.sqrt(discriminant); // no difference of nearly equal numbers
-      const one = t1 / q;
-      const other = q / (3 * t3);
-      if (one > 0 && one < h) {
-        first = one;
-        atFirst = t0 + one * (t1 + one * (t2 + one * t3));
-        slope.add(atFirst, from + one);
-      }
-      if (other > 0 && other < h) {
-        second = other;
-        atSecond = t0 + other * (t1 + other * (t2 + other * t3));
-        slope.add(atSecond, from + other);
-      }
-    }
-    const { theta } = this;
-    theta[0] = t0;
+    theta[0] = states[i + 2]!;
     theta[1] = t1;
     theta[2] = t2;
     theta[3] = t3;
     theta[4] = 0;
-    this.turns[0] = first < second ? first : second;
-    this.turns[1] = first < second ? second : first;
     let count = 0;
-    if (this.turns[0] < h) count = this.turns[1] < h ? 2 : 1;
-    this.searchDeflections(piece, states, i, count);
+    const discriminant = t2 * t2 - 3 * t1 * t3;
+    if (discriminant > 0) {
+      // Half the coefficients of θ', so that no two nearly equal numbers are subtracted.
+      const q = t2 < 0 ? Math.sqrt(discriminant) - t2 : -t2 - Math.sqrt(discriminant);
+      const one = t1 / q;
+      const other = q / (3 * t3);
+      const first = one < other ? one : other;
+      const second = one < other ? other : one;
+      if (first > 0 && first < h) turns[count++] = first;
+      if (second > 0 && second < h) turns[count++] = second;
+    }
+    this.addTurns(piece, states, i, count);
   }
 
   /** The same where the load varies: θ' is a cubic. */
   private searchVarying(piece: Piece, states: Float64Array, i: number): void {
-    const { bending: b, shearing: g, start, rate, curvature, length, from } = piece;
-    const { theta, bend, few, turns } = this;
+    const { bending: b, shearing, start, rate, curvature, length } = piece;
+    const { theta, bend, few } = this;
     theta[0] = states[i + 2]!;
-    theta[1] = b * states[i + 1]! + curvature + g * start;
-    theta[2] = (b * states[i]! + g * rate) / 2;
+    theta[1] = b * states[i + 1]! + curvature + shearing * start;
+    theta[2] = (b * states[i]! + shearing * rate) / 2;
     theta[3] = b * start * -SIXTH;
-    theta[4] = b * rate * (-1 / 24);
+    theta[4] = (b * rate * -SIXTH) / 4;
     for (let n = 0; n < 4; n++) bend[n] = (n + 1) * theta[n + 1]!;
-    const count = this.findTurns(piece, quadraticZeros(bend[1]!, 2 * bend[2]!, 3 * bend[3]!, length, few));
-    for (let n = 0; n < count; n++) this.slope.add(quartic(theta, turns[n]!), from + turns[n]!);
-    this.searchDeflections(piece, states, i, count);
+    const count = quadraticZeros(bend[1]!, 2 * bend[2]!, 3 * bend[3]!, length, few);
+    this.addTurns(piece, states, i, this.findTurns(piece, count));
   }
 
   /** The zeros of θ', a cubic, between the `count` places `few` where it turns; their number. */
   private findTurns({ length }: Piece, count: number): number {
     const { few, turns, bend, stretch } = this;
     let found = 0;
-    let value = bend[0]!;
     stretch[0] = 0;
+    stretch[2] = bend[0]!;
     for (let n = 0; n <= count; n++) {
       stretch[1] = n < count ? few[n]! : length;
-      const next = quartic(bend, stretch[1]!);
-      if (value * next < 0) turns[found++] = monotoneZero(bend, stretch);
+      stretch[3] = quartic(bend, stretch[1]!);
+      if (stretch[2]! * stretch[3]! < 0) turns[found++] = monotoneZero(bend, stretch);
       stretch[0] = stretch[1]!;
-      value = next;
+      stretch[2] = stretch[3]!;
     }
     return found;
   }
 
   /**
-   * The deflections where θ = 0, between the `count` places where it turns. Between two of those v is curved to one side
-   * only, and so beyond neither of the tangents at their ends.
+   * The slopes at the `count` places where θ turns, and the deflections where θ = 0 between those. There v is curved to
+   * one side only, and so not beyond the point where the tangents at the ends of the stretch meet.
    */
-  private searchDeflections({ from, length }: Piece, states: Float64Array, i: number, count: number): void {
-    const { turns, theta, stretch, deflection } = this;
+  private addTurns(piece: Piece, states: Float64Array, i: number, count: number): void {
+    const { theta, turns, stretch, slope, deflection } = this;
+    const { from, length } = piece;
     let s = 0;
     let v = states[i + 3]!;
     let value = theta[0]!;
     for (let n = 0; n <= count; n++) {
-      const to = n < count ? turns[n]! : length;
-      const next = quartic(theta, to);
-      const w = n < count ? this.deflectionAt(states, i, to) : states[i + 7]!;
+      let to = length;
+      let w = states[i + 7]!;
+      let next = states[i + 6]!;
+      if (n < count) {
+        to = turns[n]!;
+        next = quartic(theta, to);
+        w = this.deflectionAt(states, i, to);
+        slope.add(next, from + to);
+      }
       if (value * next < 0) {
-        const one = v + value * (to - s);
-        const other = w - next * (to - s);
-        const beyond =
-          value > 0
-            ? one > deflection.max && other > deflection.max
-            : one < deflection.min && other < deflection.min;
-        if (beyond) {
+        const bound = v + (value * (w - v - next * (to - s))) / (value - next);
+        if (value > 0 ? bound > deflection.max : bound < deflection.min) {
           stretch[0] = s;
           stretch[1] = to;
+          stretch[2] = value;
+          stretch[3] = next;
           const level = monotoneZero(theta, stretch);
           deflection.add(this.deflectionAt(states, i, level), from + level);
         }
@@ -242,20 +227,27 @@ export class ExtremeFinder {
   }
 }
 
-/** A quantity (0: V, 1: M, 2: θ, 3: v) at both ends of every piece. */
-function compareEnds({ piece, points, states }: Geometry, range: Range, quantity: number): void {
-  const end = 8 * (points - 1);
-  let max = -Infinity;
-  let min = Infinity;
-  let highest = 0;
-  let lowest = 0;
-  for (let i = quantity; i < end; i += 4) {
+/**
+ * A quantity (0: V, 1: M, 2: θ, 3: v) at the ends of the pieces: every `step` numbers of the states, 4 for both ends of
+ * each, 8 where it goes on from piece to piece without a jump.
+ */
+function compareEnds(
+  { piece, points, states }: Geometry,
+  range: Range,
+  quantity: number,
+  step: number,
+): void {
+  const last = 8 * (points - 1) - 4 + quantity;
+  let max = states[last]!;
+  let min = max;
+  let highest = last;
+  let lowest = last;
+  for (let i = quantity; i < last; i += step) {
     const value = states[i]!;
     if (value > max) {
       max = value;
       highest = i;
-    }
-    if (value < min) {
+    } else if (value < min) {
       min = value;
       lowest = i;
     }

@@ -15,6 +15,10 @@ export class Geometry {
   supports = 0;
   /** Whether any support is a spring against vertical movement. */
   sprung = false;
+  /** Whether any support holds rotation; whether M jumps, there or at a couple; whether θ does, where the beam shears. */
+  holds = false;
+  turned = false;
+  shears = false;
   readonly piece: Piece[] = [];
   readonly support: Support[] = [];
   readonly span: Span[] = [];
@@ -52,6 +56,14 @@ export class Geometry {
     return low;
   }
 
+  /** Length of the shortest piece, m. */
+  shortest(): number {
+    const { piece, points, length } = this;
+    let shortest = length;
+    for (let k = 0; k + 1 < points; k++) if (piece[k]!.length < shortest) shortest = piece[k]!.length;
+    return shortest;
+  }
+
   private takeSupports({ supports }: Beam): boolean {
     const { support, span } = this;
     while (support.length < supports.length) {
@@ -60,6 +72,7 @@ export class Geometry {
     }
     let count = 0;
     this.sprung = false;
+    this.holds = false;
     for (let i = 0; i < supports.length; i++) {
       const { at, vertical, rotation } = supports[i]!;
       if (vertical.kind === 'free') {
@@ -99,6 +112,7 @@ export class Geometry {
       this.sprung = true;
     }
     if (rotation.kind !== 'free') {
+      this.holds = true;
       record.held = true;
       record.turn = rotation.movement;
       if (rotation.kind === 'spring') record.turnGive = 1 / rotation.stiffness;
@@ -166,11 +180,13 @@ export class Geometry {
   private takeSegments(segments: readonly Segment[]): void {
     const { piece } = this;
     const last = this.points - 1;
+    this.shears = false;
     let k = 0;
     for (let i = 0; i < segments.length; i++) {
       const { to, ei, ga } = segments[i]!;
       const bending = 1 / ei;
       const shearing = ga === null ? 0 : 1 / ga;
+      if (ga !== null) this.shears = true;
       for (; k < last && piece[k]!.from < to; k++) {
         piece[k]!.bending = bending;
         piece[k]!.shearing = shearing;

@@ -4,26 +4,28 @@ import type { Geometry } from './geometry';
 const THIRD = 1 / 3; // a product is several times faster than a quotient
 const FIFTH = 1 / 5;
 
-/** Values just left and just right of x; at the two ends of the beam both are the value inside it. */
-export class FastStation {
+/** What a section carries and how it lies: V, M, θ and v at x. */
+export class SectionValues {
   x = NaN;
-  leftShear = NaN;
-  rightShear = NaN;
-  leftMoment = NaN;
-  rightMoment = NaN;
-  leftSlope = NaN;
-  rightSlope = NaN;
+  shear = NaN;
+  moment = NaN;
+  slope = NaN;
   deflection = NaN;
 }
 
-/** Reads V, M, θ and v at the stations' positions, which need not ascend but are read fastest if they do. */
+/**
+ * Reads V, M, θ and v at `count` stations, which need not ascend but are read fastest if they do. At a point within
+ * 1e-12 of the length the values are those of the side asked for; at the ends of the beam, those inside it.
+ */
 export function readStations(
   { piece, points, length, states }: Geometry,
-  stations: readonly FastStation[],
+  stations: readonly SectionValues[],
   count: number,
+  side: 'left' | 'right',
 ): void {
   const nearness = COINCIDENT * length;
   const last = points - 2;
+  const beside = side === 'left' ? 4 : 0;
   let k = 0;
   for (let i = 0; i < count; i++) {
     const station = stations[i]!;
@@ -34,12 +36,9 @@ export function readStations(
     const s = x - from;
     const n = 8 * k;
     if (s <= nearness && k > 0) {
-      station.leftShear = states[n - 4]!;
-      station.leftMoment = states[n - 3]!;
-      station.leftSlope = states[n - 2]!;
-      station.rightShear = states[n]!;
-      station.rightMoment = states[n + 1]!;
-      station.rightSlope = states[n + 2]!;
+      station.shear = states[n - beside]!;
+      station.moment = states[n - beside + 1]!;
+      station.slope = states[n - beside + 2]!;
       station.deflection = states[n + 3]!;
       continue;
     }
@@ -51,15 +50,10 @@ export function readStations(
     const psi = states[n + 2]! + g * V;
     const gain = s * (V - half * (start + change * THIRD));
     const shear = V - s * (start + change / 2);
-    const slope = psi - g * shear + s * (curvature + b * (M + half * (V - third * (start + change / 4))));
     const sag = M + third * (V - (s / 4) * (start + change * FIFTH));
-    const bent = s * (psi + half * (curvature + b * sag));
-    station.leftShear = shear;
-    station.rightShear = shear;
-    station.leftMoment = M + gain;
-    station.rightMoment = M + gain;
-    station.leftSlope = slope;
-    station.rightSlope = slope;
-    station.deflection = states[n + 3]! - g * gain + bent;
+    station.shear = shear;
+    station.moment = M + gain;
+    station.slope = psi - g * shear + s * (curvature + b * (M + half * (V - third * (start + change / 4))));
+    station.deflection = states[n + 3]! - g * gain + s * (psi + half * (curvature + b * sag));
   }
 }

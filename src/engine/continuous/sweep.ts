@@ -1,4 +1,5 @@
 import type { Geometry } from './geometry';
+import type { Piece, Support } from './records';
 
 const THIRD = 1 / 3; // a product is several times faster than a quotient
 const FIFTH = 1 / 5;
@@ -21,28 +22,35 @@ export class Sweep {
   run(geometry: Geometry, moved: number): void {
     const { supports, points, support, span, piece } = geometry;
     const last = supports - 1;
+    let from = support[0]!;
     this.V = 0;
-    if (support[0]!.point > 0) this.integrateOverhang(geometry);
-    for (let j = 0; j <= last; j++) {
-      const { point, left, right, risen, held } = support[j]!;
-      const { force, couple } = piece[point]!;
-      const own = span[j]!;
-      const turning = held ? left - right - couple : 0;
-      let shear = own.shear;
-      if (j < last) {
-        const next = support[j + 1]!;
-        shear = own.leftShear + (next.left - right) * own.inverse;
-        this.psi =
-          (next.risen - risen) * own.inverse - own.leftTurn - own.near * right - own.cross * next.left;
-      } else if (last === 0) this.psi = moved * support[0]!.turn - support[0]!.turnGive * turning;
-      if (j === 0) this.firstPsi = this.psi;
-      support[j]!.up = shear - this.V + force;
-      support[j]!.couple = turning;
+    if (from.point > 0) this.integrateOverhang(geometry);
+    for (let j = 0; j < last; j++) {
+      const to = support[j + 1]!;
+      const { inverse, near, cross, leftShear, leftTurn } = span[j]!;
+      const { right, risen } = from;
+      const { left } = to;
+      const shear = leftShear + (left - right) * inverse;
+      const psi = (to.risen - risen) * inverse - leftTurn - near * right - cross * left;
+      if (j === 0) this.firstPsi = psi;
+      hold(from, piece[from.point]!, shear - this.V);
       this.V = shear;
       this.M = right;
+      this.psi = psi;
       this.v = risen;
-      this.integrate(geometry, point, j < last ? support[j + 1]!.point : points - 1);
+      this.integrate(geometry, from.point, to.point);
+      from = to;
     }
+    const { shear } = span[last]!;
+    hold(from, piece[from.point]!, shear - this.V);
+    if (last === 0) {
+      this.psi = moved * from.turn - from.turnGive * from.couple;
+      this.firstPsi = this.psi;
+    }
+    this.V = shear;
+    this.M = from.right;
+    this.v = from.risen;
+    this.integrate(geometry, from.point, points - 1);
     if (support[0]!.point > 0) this.placeOverhang(geometry);
   }
 
@@ -102,4 +110,10 @@ export class Sweep {
       states[8 * k + 7]! += lift + turn * piece[k + 1]!.from;
     }
   }
+}
+
+/** The reactions of a support at which the shear rises by `step`. */
+function hold(support: Support, { force, couple }: Piece, step: number): void {
+  support.up = step + force;
+  support.couple = support.held ? support.left - support.right - couple : 0;
 }

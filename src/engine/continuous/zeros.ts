@@ -1,5 +1,5 @@
-/** A step of Newton's method that is this part of the piece is the last: the one after it would be rounding. */
-const STEP = 1e-7;
+/** A step of Halley's method that is this part of the piece is the last: the one after it, its cube, would be rounding. */
+const STEP = 1e-5;
 const STEPS = 100; // bisection alone needs 60
 
 /** Zeros of c₀ + c₁ s + c₂ s² strictly between 0 and h, ascending, into `out`; their number. Closed form. */
@@ -28,8 +28,8 @@ export const quartic = (c: Float64Array, s: number): number =>
   c[0]! + s * (c[1]! + s * (c[2]! + s * (c[3]! + s * c[4]!)));
 
 /**
- * The zero of a quartic in a stretch where it is monotone and changes its sign: stretch[0] to stretch[1]. Newton's
- * method from the chord, kept inside by bisection.
+ * The zero of a quartic c between stretch[0] and stretch[1], where its values are stretch[2] and stretch[3], of opposite
+ * signs, and it is monotone: Halley's method from the chord, kept inside by bisection.
  */
 export function monotoneZero(c: Float64Array, stretch: Float64Array): number {
   const c0 = c[0]!;
@@ -39,17 +39,19 @@ export function monotoneZero(c: Float64Array, stretch: Float64Array): number {
   const c4 = c[4]!;
   let from = stretch[0]!;
   let to = stretch[1]!;
+  const low = stretch[2]!;
   const last = STEP * to;
-  const low = quartic(c, from);
   const rises = low < 0;
-  let s = from + ((to - from) * low) / (low - quartic(c, to));
+  let s = from + ((to - from) * low) / (low - stretch[3]!);
   for (let step = 0; step < STEPS; step++) {
     const value = c0 + s * (c1 + s * (c2 + s * (c3 + s * c4)));
+    const slope = c1 + s * (2 * c2 + s * (3 * c3 + s * 4 * c4));
+    const curve = c2 + s * (3 * c3 + s * 6 * c4); // half the second derivative
     if (value < 0 === rises) from = s;
     else to = s;
-    const next = s - value / (c1 + s * (2 * c2 + s * (3 * c3 + s * 4 * c4)));
+    const next = s - (value * slope) / (slope * slope - value * curve);
     if (Math.abs(next - s) <= last) return next;
-    s = next > from && next < to ? next : (from + to) / 2; // also where the derivative is 0
+    s = next > from && next < to ? next : (from + to) / 2; // also where the quotient is none
   }
   return s;
 }

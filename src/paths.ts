@@ -9,6 +9,13 @@ export const paths = {
   template: (slug: string) => `/templates/${encodeURIComponent(slug)}`,
   templateRevision: (slug: string, number: number) =>
     `/templates/${encodeURIComponent(slug)}/revisions/${number}`,
+  templateDraft: (slug: string, number: number) => `/templates/${encodeURIComponent(slug)}/drafts/${number}`,
+  library: '/library',
+  /** Where a revision of any kind of document is reviewed. */
+  review: (kind: string, slug: string, number: number) =>
+    `/library/${kind}/${encodeURIComponent(slug)}/revisions/${number}`,
+  recall: (id: string) => `/library/recalls/${encodeURIComponent(id)}`,
+  request: (number: number) => `/library/requests/${number}`,
   sections: '/sections',
   section: (table: string, designation: string) =>
     `/sections/${encodeURIComponent(table)}/${encodeURIComponent(designation)}`,
@@ -36,6 +43,14 @@ export const paths = {
     tokenById: (id: string) => `/api/v1/tokens/${encodeURIComponent(id)}`,
     openapi: '/api/v1/openapi.json',
     solve: '/api/v1/beams/solve',
+    drafts: (kind: string, slug: string) => `/api/v1/library/${kind}/${encodeURIComponent(slug)}/drafts`,
+    draft: (kind: string, slug: string, number: number) =>
+      `/api/v1/library/${kind}/${encodeURIComponent(slug)}/drafts/${number}`,
+    revision: (kind: string, slug: string, number: number) =>
+      `/api/v1/library/${kind}/${encodeURIComponent(slug)}/revisions/${number}`,
+    recall: (id: string) => `/api/v1/recalls/${encodeURIComponent(id)}`,
+    requests: '/api/v1/requests',
+    request: (number: number) => `/api/v1/requests/${number}`,
     sections: '/api/v1/sections',
     jobs: '/api/v1/jobs',
     job: (number: string) => `/api/v1/jobs/${encodeURIComponent(number)}`,

@@ -5,6 +5,8 @@ import { type Template, templateSchema } from './document';
 import { parseExpression } from './parse';
 import type { Expression } from './tree';
 
+export { checkTemplate };
+
 const writtenExpression = z.string().transform((text, context): Expression => {
   const parsing = parseExpression(text);
   if (parsing.ok) return { text, tree: parsing.tree };
@@ -14,7 +16,7 @@ const writtenExpression = z.string().transform((text, context): Expression => {
 });
 
 /** A template as an author writes it, and as data/templates holds it: every expression is text. */
-const writtenTemplate = templateSchema(writtenExpression);
+export const writtenTemplate = templateSchema(writtenExpression);
 
 /**
  * The template with a tree beside every expression, or every fault at its place: of form and syntax first, and of

@@ -15,6 +15,15 @@ const TABLE: Record<Action, [subject: Subject, allowed: string]> = {
   'library.submit': [{ authorId: ME }, 'engineer librarian'],
   'library.review': [{ authorId: OTHER }, 'checker librarian'],
   'library.withdraw': [{}, 'librarian principal'],
+  'library.comment': [{}, 'engineer checker librarian principal'],
+  'library.confirm': [{}, 'librarian'],
+  'library.set-review': [{}, 'librarian'],
+  'library.trace': [{}, 'librarian principal'],
+  'recall.decide': [OPEN, 'engineer principal'],
+  'recall.close': [{}, 'librarian principal'],
+  'request.raise': [{}, 'reader engineer checker librarian principal administrator'],
+  'request.read': [{ authorId: ME }, 'reader engineer checker librarian principal administrator'],
+  'request.answer': [{}, 'librarian'],
   'job.create': [{}, 'engineer'],
   'job.read': [OPEN, 'reader engineer checker librarian principal administrator'],
   'job.edit': [OPEN, 'engineer'],
@@ -76,6 +85,12 @@ describe('conditions', () => {
     const all = { personId: ME, roles: ROLES };
     expect(may(all, 'library.review', { authorId: ME })).toBe(false);
     expect(may(all, 'member.check', { access: 'practice', authorId: ME })).toBe(false);
+  });
+
+  test('whoever changed a draft does not review it', () => {
+    const changed = { authorId: OTHER, editorIds: ['a third person', ME] };
+    expect(may({ personId: ME, roles: ROLES }, 'library.review', changed)).toBe(false);
+    expect(mayAs('checker', 'library.review', { authorId: OTHER, editorIds: ['a third person'] })).toBe(true);
   });
 
   test('a condition whose field was forgotten refuses', () => {

@@ -10,6 +10,8 @@ export interface Person {
 export interface Subject {
   /** Who wrote the document, or saved the member last. */
   readonly authorId?: string;
+  /** Who changed the document besides its author. */
+  readonly editorIds?: readonly string[];
   /** Who can open the job besides principals and administrators: all the practice, or the people named. */
   readonly access?: 'practice' | readonly string[];
 }
@@ -18,8 +20,8 @@ type Condition = (person: Person, subject: Subject) => boolean;
 
 const isAuthor: Condition = (person, { authorId }) => authorId === person.personId;
 
-const isNotAuthor: Condition = (person, { authorId }) =>
-  authorId !== undefined && authorId !== person.personId;
+const isNotAuthor: Condition = ({ personId }, { authorId, editorIds = [] }) =>
+  authorId !== undefined && authorId !== personId && !editorIds.includes(personId);
 
 /** The database's policy says the same: principals answer for every job, administrators restore any. */
 const hasAccess: Condition = ({ personId, roles }, { access }) =>
@@ -58,13 +60,43 @@ const RULES = {
     grant(['engineer'], isAuthor),
   ),
   'library.review': rule(
-    'A document is reviewed and issued by a checker or a librarian who did not write it.',
+    'A document is reviewed and issued by a checker or a librarian who did not write or change it.',
     grant(['checker', 'librarian'], isNotAuthor),
   ),
   'library.withdraw': rule(
     'A document is withdrawn by a librarian or a principal.',
     grant(['librarian', 'principal']),
   ),
+  'library.comment': rule(
+    'Library documents are commented on by the people who design, check and sign.',
+    grant(['engineer', 'checker', 'librarian', 'principal']),
+  ),
+  'library.confirm': rule(
+    'What a document says is confirmed against its source by a librarian.',
+    grant(['librarian']),
+  ),
+  'library.set-review': rule('Review dates are set by a librarian.', grant(['librarian'])),
+  'library.trace': rule(
+    'Uses in jobs for named people are listed for a librarian or a principal.',
+    grant(['librarian', 'principal']),
+  ),
+
+  'recall.decide': rule(
+    'What becomes of a recalled member is decided by an engineer or a principal with access to the job.',
+    grant(['engineer', 'principal'], hasAccess),
+  ),
+  'recall.close': rule(
+    'A recall is closed by a librarian or a principal.',
+    grant(['librarian', 'principal']),
+  ),
+
+  'request.raise': rule('Requests are raised by people with a role in the practice.', grant(ROLES)),
+  'request.read': rule(
+    'A request is read by whoever raised it and by the librarians.',
+    grant(['librarian']),
+    grant(ROLES, isAuthor),
+  ),
+  'request.answer': rule('Requests are answered by a librarian.', grant(['librarian'])),
 
   'job.create': rule('Jobs are begun by an engineer.', grant(['engineer'])),
   'job.read': rule(JOB_ACCESS, grant(ROLES, hasAccess)),

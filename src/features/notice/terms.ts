@@ -14,4 +14,5 @@ export type NoticeKind = (typeof NOTICE_KINDS)[number];
 export const MAIL_MODES = ['immediate', 'digest'] as const;
 export type MailMode = (typeof MAIL_MODES)[number];
 
-export const MAIL_STATES = ['waiting', 'sent', 'failed'] as const;
+/** `sending`: the server has the message, and has not said yet that it takes it. */
+export const MAIL_STATES = ['waiting', 'sending', 'sent', 'failed'] as const;

@@ -4,7 +4,7 @@ import { person } from '@/db/schema/account';
 import { document, revision } from '@/db/schema/library';
 import { member } from '@/db/schema/member';
 import { section } from '@/db/schema/section';
-import type { DocumentKind, RevisionState } from './review';
+import type { ChangeClass, Consequence, DocumentKind, RevisionState } from './review';
 
 const author = aliasedTable(person, 'author');
 const reviewer = aliasedTable(person, 'reviewer');
@@ -27,8 +27,9 @@ export interface LibraryRevision {
   readonly date: Date;
   readonly issuedAt: Date | null;
   readonly changeNote: string;
-  readonly changeClass: string;
-  readonly consequence: string;
+  /** Null while a draft does not say. */
+  readonly changeClass: ChangeClass | null;
+  readonly consequence: Consequence | null;
   readonly withdrawalReason: string | null;
   readonly body: unknown;
 }

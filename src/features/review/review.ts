@@ -9,6 +9,18 @@ export const DOCUMENT_KINDS = [
 ] as const;
 export type DocumentKind = (typeof DOCUMENT_KINDS)[number];
 
+/** Part of an address: `/templates/two-spans-uniform`. */
+export const SLUG = /^[a-z][a-z0-9]*(-[a-z0-9]+)*$/;
+export const LONGEST_SLUG = 80;
+
+export const KIND_NAMES: Readonly<Record<DocumentKind, string>> = {
+  template: 'template',
+  'section-table': 'section table',
+  criteria: 'set of criteria',
+  'combination-set': 'combination set',
+  'material-set': 'material set',
+};
+
 export const REVISION_STATES = ['draft', 'in_review', 'issued', 'superseded', 'withdrawn'] as const;
 export type RevisionState = (typeof REVISION_STATES)[number];
 
@@ -42,18 +54,22 @@ export const REVISION_STEPS = {
 } as const satisfies Record<string, Step>;
 
 /** The steps that a person asks for. */
-const PERSON_STEPS = [
+export const PERSON_STEPS = [
   'submit',
   'return',
   'issue',
   'withdraw',
 ] as const satisfies readonly (keyof typeof REVISION_STEPS)[];
-type PersonStep = (typeof PERSON_STEPS)[number];
+export type PersonStep = (typeof PERSON_STEPS)[number];
 
 /** The steps that this person could take of this revision now: the buttons to show. */
 export function stepsFor(
   person: Person,
-  revision: { readonly state: RevisionState; readonly authorId: string },
+  revision: {
+    readonly state: RevisionState;
+    readonly authorId: string;
+    readonly editorIds?: readonly string[];
+  },
 ): readonly PersonStep[] {
   return PERSON_STEPS.filter((name) => {
     const step: Step = REVISION_STEPS[name];

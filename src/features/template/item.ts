@@ -37,8 +37,9 @@ const revisionLine = z.strictObject({
   author: z.string(),
   reviewer: z.string().nullable(),
   change_note: z.string(),
-  change_class: z.enum(CHANGE_CLASSES),
-  consequence: z.enum(CONSEQUENCES),
+  /** Null while a draft does not say. */
+  change_class: z.enum(CHANGE_CLASSES).nullable(),
+  consequence: z.enum(CONSEQUENCES).nullable(),
   sha256: z.string(),
   engine_version: z.string(),
 });
@@ -69,8 +70,8 @@ export interface RevisionLine {
   readonly author: string;
   readonly reviewer: string | null;
   readonly changeNote: string;
-  readonly changeClass: string;
-  readonly consequence: string;
+  readonly changeClass: string | null;
+  readonly consequence: string | null;
   readonly sha256: string;
   readonly engineVersion: string;
 }

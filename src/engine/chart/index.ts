@@ -13,6 +13,7 @@ export {
   power,
   powerOf,
   simplest,
+  substitute,
   subtract,
   symbol,
   symbolsOf,

@@ -10,13 +10,15 @@ export type LoadGroup = {
   /** The letter that it is known by. */
   tex: string;
   numeric: Load;
+  /** Places in the beam's list of those that it is the sum of. */
+  of: readonly number[];
   /** Cut at every support and section where it varies, so that its size there has a letter. */
   fine: readonly NamedLoad[];
   /** The same, cut only where the released beam has a support or a section: what the charts are asked for. */
   coarse: readonly NamedLoad[];
 };
 
-type Sized = { load: Load; tex: string };
+type Sized = { load: Load; tex: string; of: readonly number[] };
 
 /**
  * Loads with letters. Loads of one letter at one place are one load (a size that is split between groups is one size in
@@ -36,20 +38,20 @@ export function nameLoads(
     beam.supports.filter((_, index) => keep(index)).map(({ at }) => at);
   const all = new Set([...sections, ...supportsAt(() => true)]);
   const staying = new Set([...sections, ...supportsAt((index) => !removed.has(index))]);
-  return merged(beam.loads, names).map(({ load, tex }) => {
+  return merged(beam.loads, names).map(({ load, tex, of }) => {
     const size = sizer(letters, tex);
     if (load.kind === 'line' && load.w0 !== load.w1) {
       const points = pointsWithin(load, all).map((x) => sizedPoint(load, x, size, letters, places));
       const kept = points.filter(({ x }) => x === load.from || x === load.to || staying.has(x));
-      return groupOf(load, tex, stretches(points), stretches(kept));
+      return { ...groupOf(load, tex, stretches(points), stretches(kept)), of };
     }
     const one = [nameLoad(load, size, places)];
-    return groupOf(load, tex, one, one);
+    return { ...groupOf(load, tex, one, one), of };
   });
 }
 
 /** The letter is the template's, else that of the size. */
-function groupOf(numeric: Load, tex: string, fine: NamedLoad[], coarse: NamedLoad[]): LoadGroup {
+function groupOf(numeric: Load, tex: string, fine: NamedLoad[], coarse: NamedLoad[]): Omit<LoadGroup, 'of'> {
   const sizes = fine.flatMap((load) => {
     if (load.kind === 'point') return symbolsOf(load.p);
     if (load.kind === 'couple') return symbolsOf(load.m);
@@ -116,7 +118,7 @@ function merged(loads: readonly Load[], names: readonly LoadName[]): Sized[] {
     const place = 'at' in load ? load.at : `${load.from}–${load.to}`;
     const key = tex === '' ? String(i) : `${load.kind} ${tex} ${place}`;
     const alike = found.get(key);
-    found.set(key, { load: alike ? together(alike.load, load) : load, tex });
+    found.set(key, { load: alike ? together(alike.load, load) : load, tex, of: [...(alike?.of ?? []), i] });
   });
   return [...found.values()];
 }

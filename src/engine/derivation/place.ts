@@ -1,4 +1,4 @@
-import { add, constant, type Expression, expand, multiply, subtract, ZERO } from '../chart/index';
+import { add, constant, type Expression, expand, multiply, subtract, symbolsOf, ZERO } from '../chart/index';
 import type { Letters } from './symbols';
 import type { NamedLength } from './types';
 
@@ -7,6 +7,9 @@ export class Places {
   private readonly known: { readonly x: number; readonly at: Expression; isStart: boolean }[] = [
     { x: 0, at: ZERO, isStart: true },
   ];
+
+  /** What each numbered letter of a length is the distance between. */
+  readonly distances = new Map<string, { readonly from: number; readonly to: number }>();
 
   constructor(
     private readonly letters: Letters,
@@ -27,7 +30,7 @@ export class Places {
     if (found) found.isStart = true;
     if (found) return found.at;
     const from = this.find(before) ?? this.load(before);
-    return this.remember(x, add(from, this.letters.number('L', x - before, 'length')), true);
+    return this.remember(x, add(from, this.distance('L', before, x)), true);
   }
 
   /**
@@ -44,7 +47,13 @@ export class Places {
       const half = multiply(constant({ n: 1, d: 2 }), expand(subtract(next.at, from.at)));
       return this.remember(x, expand(add(from.at, half)));
     }
-    return this.remember(x, add(from.at, this.letters.number('a', x - from.x, 'length')));
+    return this.remember(x, add(from.at, this.distance('a', from.x, x)));
+  }
+
+  private distance(letter: string, from: number, to: number): Expression {
+    const length = this.letters.number(letter, to - from, 'length');
+    for (const tex of symbolsOf(length)) this.distances.set(tex, { from, to });
+    return length;
   }
 
   /** A position with a letter of its own. */

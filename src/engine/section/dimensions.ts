@@ -31,6 +31,12 @@ export type SectionDimensions =
 export const depthOf = (d: SectionDimensions): number => ('h' in d ? d.h : d.d);
 export const widthOf = (d: SectionDimensions): number => ('b' in d ? d.b : d.d);
 
+/** The thickness that decides the strength: the thicker of flange and web, since either may govern. */
+export function governingThickness(d: SectionDimensions): number {
+  if ('tf' in d) return Math.max(d.tf, d.tw);
+  return 't' in d ? d.t : Math.min(depthOf(d), 'b' in d ? d.b : depthOf(d));
+}
+
 /** EN 10210 hot finished, EN 10219 cold formed, ASTM A500 cold formed. */
 export const TUBE_STANDARDS = ['EN 10210', 'EN 10219', 'ASTM A500'] as const;
 export type TubeStandard = (typeof TUBE_STANDARDS)[number];

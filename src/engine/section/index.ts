@@ -4,6 +4,7 @@ export {
   depthOf,
   designWall,
   dimensionFaults,
+  governingThickness,
   type IDimensions,
   ImpossibleSection,
   SECTION_SHAPES,

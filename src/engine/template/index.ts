@@ -5,13 +5,14 @@
  */
 export { dimensionOf, type KindReading } from './dimension';
 export type { Arrangement, LoadKind, Selector, Source, Template } from './document';
-export { evaluateNumber, evaluateTruth } from './evaluate';
+export { evaluateNumber, evaluateTruth, rowsOf, type Scope, within } from './evaluate';
 export { type Dimensioned, type Instance, type InstanceOptions, instantiate } from './instance';
-export type { NamedLoad } from './loads';
+export type { LoadShare, NamedLoad } from './loads';
 export { limitsOf, type ParameterFault, unitOf } from './measured';
 export type { Column, Parameter, QuantityParameter, RowsParameter, Severity } from './parts';
 export { type ProofResult, runProofCases } from './proof';
 export { judgeRules, type RuleOutcome } from './rules';
-export { ruleKinds } from './scope';
+export { groupOfRow, ruleKinds, scopeOf } from './scope';
 export { select, selectorDimension } from './select';
-export { type Row, readParameters, type Value } from './values';
+export { type Expression, symbolsOf, type Tree } from './tree';
+export { isRows, type Row, readParameters, type Value, type Values } from './values';

@@ -9,7 +9,7 @@ import {
 import { readQuantity } from '../quantity/index';
 import type { Template } from './document';
 import { evaluateNumber, evaluateTruth, type Scope } from './evaluate';
-import { loadOf, loadShares, loadSizes, type NamedLoad, nameOf } from './loads';
+import { type LoadShare, loadOf, loadShares, loadSizes, type NamedLoad, nameOf } from './loads';
 import type { ParameterFault } from './measured';
 import { judgeRules, type RuleOutcome } from './rules';
 import { scopeOf } from './scope';
@@ -42,6 +42,8 @@ export type Instance = {
   dimensions: readonly Dimensioned[];
   /** In the order of the beam's loads. */
   loadNames: readonly NamedLoad[];
+  /** What each load of the beam is made from, in its order; the section's own weight, after them, from none. */
+  shares: readonly LoadShare[];
   /** Those that need no result yet. */
   rules: readonly RuleOutcome[];
 };
@@ -90,6 +92,7 @@ export function instantiate(
       derived: Object.fromEntries(template.derived.map(({ symbol }) => [symbol, Number(scope.get(symbol))])),
       letters: beam.supports.map((_, index) => supportLetter(index)),
       dimensions: dimensionsOf(template, scope),
+      shares,
       loadNames: [...shares.map((share) => nameOf(template, share)), ...own.map(() => OWN_WEIGHT)],
       rules,
     },

@@ -3,6 +3,7 @@ import { STANDARD_GRAVITY } from '@/engine/quantity';
 import {
   depthOf,
   elasticStrength,
+  governingThickness,
   type Material,
   type SectionDimensions,
   sectionProperties,
@@ -31,12 +32,6 @@ export type SectionResolution =
   | { readonly ok: false; readonly message: string };
 
 const CM = 0.01;
-
-/** The thickness that decides the strength: the thicker of flange and web, since either may govern. */
-function governingThickness(d: SectionDimensions): number {
-  if ('tf' in d) return Math.max(d.tf, d.tw);
-  return 't' in d ? d.t : Math.min(depthOf(d), 'b' in d ? d.b : depthOf(d));
-}
 
 /**
  * Stiffness, weight and strength of a section of a material. Timber weighs its area times the material's mean density,

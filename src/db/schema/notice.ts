@@ -35,6 +35,7 @@ export const notice = pgTable(
     ofMember('notice_person_fk', table.practiceId, table.personId),
     uniqueIndex('notice_dedupe').on(table.practiceId, table.personId, table.dedupe),
     index('notice_newest').on(table.practiceId, table.personId, table.createdAt),
+    index('notice_unread').on(table.practiceId, table.personId).where(sql`${table.readAt} is null`),
     check('notice_kind', oneOf(table.kind, NOTICE_KINDS)),
     tenantPolicy('notice'),
   ],
@@ -65,6 +66,7 @@ export const mail = pgTable(
     ofMember('mail_person_fk', table.practiceId, table.personId),
     uniqueIndex('mail_dedupe').on(table.practiceId, table.personId, table.dedupe),
     index('mail_due').on(table.practiceId, table.state, table.dueAt),
+    index('mail_unsent').on(table.dueAt).where(sql`${table.state} in ('waiting', 'sending')`),
     check('mail_kind', oneOf(table.kind, NOTICE_KINDS)),
     check('mail_mode', oneOf(table.mode, MAIL_MODES)),
     check('mail_state', oneOf(table.state, MAIL_STATES)),
@@ -73,7 +75,7 @@ export const mail = pgTable(
   ],
 );
 
-/** How a person takes the e-mails of a kind; without a row, as the kind has it. */
+/** How a person takes the e-mails of a kind; without a row, as the kind has it. A recall is never muted. */
 export const noticePreference = pgTable(
   'notice_preference',
   {
@@ -86,6 +88,7 @@ export const noticePreference = pgTable(
     primaryKey({ columns: [table.practiceId, table.personId, table.kind] }),
     ofMember('notice_preference_person_fk', table.practiceId, table.personId),
     check('notice_preference_kind', oneOf(table.kind, NOTICE_KINDS)),
+    check('notice_preference_not_recall', sql`${table.kind} <> 'recall'`),
     check('notice_preference_mode', oneOf(table.mode, [...MAIL_MODES, 'none'])),
     tenantPolicy('notice_preference'),
   ],

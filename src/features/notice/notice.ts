@@ -1,0 +1,50 @@
+import { z } from 'zod';
+import { NOTICE_KINDS, type NoticeKind } from './terms';
+
+/** What the e-mail says besides the notice's own title and detail. */
+export const MailData = z.strictObject({
+  /** Reference of a library document, "Prop 3": all that the subject may name. Never a job's or a member's. */
+  reference: z.string().max(100).optional(),
+  /** Rows of a small table: Reason, Severity, Your members. */
+  facts: z
+    .array(z.strictObject({ label: z.string().max(100), value: z.string().max(4000) }))
+    .max(50)
+    .optional(),
+});
+export type MailData = z.output<typeof MailData>;
+
+/** Something that happened, for the people whom it concerns. */
+export interface Told {
+  readonly people: readonly string[];
+  readonly kind: NoticeKind;
+  /** One line that stands alone: "Prop 3, revision 2, was recalled". */
+  readonly title: string;
+  readonly detail?: string;
+  /** Path of the page that it is about, from `paths`. */
+  readonly href: string;
+  /** Names the event: nobody is told of one twice, however often it is written. */
+  readonly dedupe: string;
+  readonly mailData?: MailData;
+}
+
+/** A notice as its reader sees it. */
+export const NoticeView = z.strictObject({
+  id: z.uuid(),
+  kind: z.enum(NOTICE_KINDS),
+  title: z.string(),
+  detail: z.string(),
+  href: z.string(),
+  created_at: z.iso.datetime(),
+  read_at: z.iso.datetime().nullable(),
+});
+export type NoticeView = z.output<typeof NoticeView>;
+
+const DIGEST_HOUR = 6; // UTC
+
+/** The next hour at which digests go out. */
+export function nextDigest(now: Date): Date {
+  const next = new Date(now);
+  next.setUTCHours(DIGEST_HOUR, 0, 0, 0);
+  if (next <= now) next.setUTCDate(next.getUTCDate() + 1);
+  return next;
+}

@@ -4,7 +4,7 @@
  * by what is printed.
  */
 export function evaluateTex(tex: string): number {
-  return new Reader(tex).whole();
+  return new Reader(tex.replaceAll(/\\Big[lr](?=[()])/g, '')).whole();
 }
 
 /** Gauss–Legendre on −1 … 1 with five points: exact for polynomials up to the ninth power. */
@@ -176,7 +176,7 @@ export function readNumber(tex: string): { value: number; lastDigit: number } {
 /** The lines of an aligned display; one line is itself. */
 export function linesOf(tex: string): { left: string; right: string }[] {
   const inside = tex.replace('\\begin{aligned}', '').replace('\\end{aligned}', '');
-  return inside.split('\\\\').map((line) => {
+  return inside.split('\\\\[3pt]').map((line) => {
     const [left = '', ...right] = line.replace('&', '').split('=');
     return { left, right: right.join('=') };
   });

@@ -8,6 +8,8 @@ import {
   multiply,
   type NamedLoad,
   negate,
+  type Released,
+  type SupportMovements,
   shearTerms,
   subtract,
   symbol,
@@ -15,7 +17,7 @@ import {
 import { evaluate } from '../polynomial/index';
 import type { Cause } from './charted';
 import { fromChart, type MovementPart } from './movement';
-import { type NamedBeam, type NamedSupport, settlementOf, springOf } from './named-beam';
+import { type NamedBeam, type NamedSupport, settlementOf, springOf, turningOf } from './named-beam';
 import { partOn, stiffnessBetween } from './pieces';
 import { supportMomentTex } from './reactions';
 import { fixingSense, fixingTex, reactionTex } from './unknown';
@@ -25,8 +27,8 @@ import type { Worked } from './values';
 type Span = { left: NamedSupport; right: NamedSupport; from: number; to: number };
 
 /**
- * The deflection of an indeterminate beam at a place, by the charts: its span on two supports, under its own loads and
- * under the moments found at its ends. Null where the charts do not hold that.
+ * The deflection of an indeterminate beam at a place, by the charts: its span on two supports, or the whole as a
+ * cantilever, under its own loads and under the moments found at its ends. Null where the charts do not hold that.
  */
 export function finalDeflection(
   worked: Worked,
@@ -34,13 +36,11 @@ export function finalDeflection(
   place: Expression,
 ): { parts: MovementPart[]; how: string } | null {
   const { beam } = worked;
-  const span = spanAround(beam, x);
-  const stiffness = span && stiffnessBetween(beam, span.from, span.to);
-  const moments = span && endMoments(worked, span);
-  if (!span || !stiffness || !moments) return null;
-  const released = { kind: 'simple', left: span.left.at, right: span.right.at } as const;
+  const seen = seenSpan(worked, x) ?? seenCantilever(worked);
+  const stiffness = seen && stiffnessBetween(beam, seen.from, seen.to);
+  if (!seen || !stiffness) return null;
+  const { released, loads, moments, movements } = seen;
   const setting = beam.setting(stiffness.ei);
-  const loads = loadsOnSpan(beam, span);
   const under = (some: readonly NamedLoad[]) =>
     some.map((load) => chartTerms(released, load, place, 'deflection', setting));
   const [byLoads, byMoments] = [under(loads), under(moments)];
@@ -49,7 +49,7 @@ export function finalDeflection(
   const causes: [Cause, ChartTerm[]][] = [
     [{ kind: 'loads' }, byLoads.flatMap((terms) => terms ?? [])],
     [{ kind: 'ends' }, byMoments.flatMap((terms) => terms ?? [])],
-    [{ kind: 'movements' }, movementTerms(released, movementsOf(span), place, 'deflection', setting)],
+    [{ kind: 'movements' }, movementTerms(released, movements, place, 'deflection', setting)],
     [
       { kind: 'shear' },
       ga ? shearTerms(released, [...loads, ...moments], place, 'deflection', setting, ga) : [],
@@ -59,9 +59,60 @@ export function finalDeflection(
     const value = terms.flatMap((term) => term.value);
     return value.length === 0 ? [] : [fromChart(beam.letters, { cause, value, terms })];
   });
-  const ends = ['', ' and the moment at its end', ' and the moments at its ends'][moments.length];
-  const how = `: ${span.left.letter}–${span.right.letter} as a simple span under its loads${ends}`;
-  return { parts: together(parts), how };
+  const ends = ['', ' and the moment at its end', ' and the moments at its ends'][moments.length] ?? '';
+  return { parts: together(parts), how: `: ${seen.name} under its loads${ends}` };
+}
+
+/** A part of the solved beam as one that the charts know. */
+type Seen = {
+  name: string;
+  released: Released;
+  from: number;
+  to: number;
+  loads: NamedLoad[];
+  moments: NamedLoad[];
+  movements: SupportMovements;
+};
+
+function seenSpan(worked: Worked, x: number): Seen | null {
+  const { beam } = worked;
+  const span = spanAround(beam, x);
+  const moments = span && endMoments(worked, span);
+  if (!span || !moments) return null;
+  const { left, right, from, to } = span;
+  return {
+    name: `${left.letter}–${right.letter} as a simple span`,
+    released: { kind: 'simple', left: left.at, right: right.at },
+    from,
+    to,
+    loads: loadsOnSpan(beam, span),
+    moments,
+    movements: movementsOf(span),
+  };
+}
+
+/** Where one support alone carries the beam, and holds it: a cantilever with the couples of the others on it. */
+function seenCantilever({ beam }: Worked): Seen | null {
+  const { supports, hinges, groups, length } = beam;
+  const [root, ...others] = supports.filter(({ support }) => support.vertical.kind !== 'free');
+  if (!root || others.length > 0 || hinges.length > 0) return null;
+  const { vertical, rotation } = root.support;
+  if (rotation.kind !== 'rigid' || vertical.kind !== 'rigid') return null;
+  const turning = supports.filter((s) => s !== root && s.support.rotation.kind !== 'free');
+  const moments = turning.map((support) => {
+    const m = multiply(constant(fixingSense(beam, support)), symbol(fixingTex(support)));
+    return { kind: 'couple' as const, at: support.at, m };
+  });
+  const rise = negate(settlementOf(root) ?? []);
+  return {
+    name: `a cantilever fixed at ${root.letter}`,
+    released: { kind: 'cantilever', root: root.at },
+    from: 0,
+    to: beam.letters.of(length),
+    loads: groups.flatMap(({ fine }) => fine),
+    moments,
+    movements: { rises: [rise, []], rotation: turningOf(root) ?? [] },
+  };
 }
 
 /** Up to so many terms are read at once; more, part by part. */

@@ -1,2 +1,3 @@
 export { derive } from './derive';
-export { type DerivationStep, type DisplayUnit, SI_UNITS } from './types';
+export * from './lettered';
+export { type DerivationStep, type DisplayUnit, joinedNumbers, SI_UNITS } from './types';

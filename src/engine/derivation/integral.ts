@@ -7,6 +7,8 @@ export type NumberTerm = {
   value: (figures: number) => number;
   tex: (figures: number) => string;
   size: number;
+  /** The same in two: what stands before the integral, without a sign, and the rest with its sign. */
+  apart?: (figures: number) => { outside: string; inside: string };
 };
 
 /** A polynomial of the distance from the left end of a stretch, lowest power first, SI. */
@@ -73,16 +75,35 @@ export function productTerm(letters: Letters, product: Product): NumberTerm | nu
     const { end: l, a, b, factor: f } = at(figures);
     return sign * integralOf(a, b, l) * (times.isBelow ? 1 / f : f);
   };
+  const apart = (figures: number) => {
+    const { end: l, a, b, factor: f } = at(figures);
+    return {
+      outside: times.isBelow ? `\\dfrac{1}{${numberTex(f)}}` : `${numberTex(f)}\\times`,
+      inside: `${sign < 0 ? '-' : ''}\\int_{0}^{${numberTex(l)}}${integrandTex(a, b)}\\,dx`,
+    };
+  };
   return {
     value,
     size: Math.abs(value(17)),
+    apart,
     tex: (figures) => {
-      const { end: l, a, b, factor: f } = at(figures);
-      const outside = times.isBelow ? `\\dfrac{1}{${numberTex(f)}}` : `${numberTex(f)}\\times`;
-      return `${sign < 0 ? '-' : ''}${outside}\\int_{0}^{${numberTex(l)}}${integrandTex(a, b)}\\,dx`;
+      const { outside, inside } = apart(figures);
+      return inside.startsWith('-') ? `-${outside}${inside.slice(1)}` : `${outside}${inside}`;
     },
   };
 }
+
+/** The numbers of a sum; what stands before all integrals of it is written once. */
+export function sumTex(terms: readonly NumberTerm[], figures: number): string {
+  const parted = terms.flatMap(({ apart }) => (apart ? [apart(figures)] : []));
+  const outsides = new Set(parted.map(({ outside }) => outside));
+  if (terms.length > 1 && parted.length === terms.length && outsides.size === 1)
+    return `${parted[0]!.outside}\\Bigl(${joined(parted.map(({ inside }) => inside))}\\Bigr)`;
+  return joined(terms.map(({ tex }) => tex(figures)));
+}
+
+const joined = (texts: readonly string[]): string =>
+  texts.map((tex, k) => (k === 0 || tex.startsWith('-') ? tex : `+${tex}`)).join('');
 
 /** A product of plain numbers over one: r R/k, r Δ. */
 export function fractionTerm(

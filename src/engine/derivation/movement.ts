@@ -1,6 +1,6 @@
 import { type ChartTerm, type Expression, symbol } from '../chart/index';
 import type { Cause, ChartedPart } from './charted';
-import type { NumberTerm } from './integral';
+import { type NumberTerm, sumTex } from './integral';
 import { calculate, chartsOf, type Frame, withResult, written } from './step';
 import type { Letters } from './symbols';
 import type { DerivationStep } from './types';
@@ -138,13 +138,7 @@ function integralStep(
     value,
     largest: toSi(Math.max(...numbers.map(({ size }) => size)), letters.units.of(frame.kind, frame.scale)),
     total: (figures) => numbers.reduce((sum, term) => sum + term.value(figures), 0),
-    tex: (figures) =>
-      numbers
-        .map((term, k) => {
-          const own = term.tex(figures);
-          return k === 0 || own.startsWith('-') ? own : `+${own}`;
-        })
-        .join(''),
+    tex: (figures) => sumTex(numbers, figures),
   });
   const { id, title, left, extra } = frame;
   const note = numbers.length > 1 && symbols.includes('dx') ? { note: PARTED } : {};

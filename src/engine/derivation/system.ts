@@ -161,8 +161,9 @@ function lineStep(letters: Letters, unknown: Unknown, k: number, lines: readonly
   };
 }
 
+/** Lines under one another, with room for their fractions. */
 export const aligned = (lines: readonly string[]): string =>
-  lines.length === 1 ? lines[0]!.replace('&', '') : `\\begin{aligned}${lines.join('\\\\')}\\end{aligned}`;
+  `\\begin{aligned}${lines.join('\\\\[3pt]')}\\end{aligned}`;
 
 /** The equations with numbers, to as many figures as it takes until they give the redundants as they are shown. */
 export function equationsTex(system: System): string {

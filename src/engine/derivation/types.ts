@@ -35,9 +35,8 @@ type Figure = { structure: 'released' } | { structure: 'unit'; redundant: number
 export type ChartUse = { id: string; title: string; source: string };
 
 /**
- * One line of the worked derivation. `symbols` and `numbers` are TeX for maths mode and are meant to be joined by an
- * equals sign: δ_B0 = wL⁴/8EI, then the same with numbers. What the numbers come to, in the units of the working, is
- * `display`.
+ * One line of the worked derivation. `symbols` and `numbers` are TeX for maths mode: δ_B0 = wL⁴/8EI, then the same with
+ * numbers, joined as `joinedNumbers` does. What the numbers come to, in the units of the working, is `display`.
  */
 export type DerivationStep = {
   /** Unique in the derivation, e.g. "gap-B". */
@@ -59,6 +58,10 @@ export type DerivationStep = {
   charts?: ChartUse[];
   figure?: Figure;
 };
+
+/** The numbers as they follow the symbols: after an equals sign, unless they are equations of their own. */
+export const joinedNumbers = ({ numbers }: Pick<DerivationStep, 'numbers'>): string =>
+  numbers === '' || numbers.startsWith('\\begin{aligned}') ? numbers : `=${numbers}`;
 
 /** A length of the drawing and its letter, as TeX. */
 export type NamedLength = { from: number; to: number; tex: string };

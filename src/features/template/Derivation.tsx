@@ -1,49 +1,74 @@
 import { RichHtml } from '@/components/drawing/marks/RichHtml';
+import type { DerivationStep } from '@/engine/derivation';
 import { unitText } from '@/engine/quantity';
 import { WideFormula } from './WideFormula';
 import { isLong, type WorkedSteps } from './worked';
 
-/** The worked steps, numbered; the one that finds the redundant is washed. */
+const ROW =
+  'grid grid-cols-[26px_minmax(0,1fr)_132px] items-center border-b py-8 max-md:grid-cols-[28px_minmax(0,1fr)]';
+const KEY_ROW = 'border-ink bg-ochre-wash pr-9 pl-9 shadow-[inset_3px_0_0_var(--color-ochre)]';
+const FORMULA =
+  'col-start-2 min-w-0 overflow-x-auto overflow-y-hidden py-1 max-md:col-span-2 max-md:col-start-1 [&_.base]:my-3';
+
+/** The worked steps, numbered; those that find the redundants are washed. */
 export function Derivation({ steps, formulas }: WorkedSteps) {
   return (
     <ol className="mt-6 border-t-2 border-ink">
-      {steps.map((step, index) => {
-        const { id, title, display, unit, note, key, charts = [] } = step;
-        return (
-          <li
-            key={id}
-            data-key-step={key ? '' : undefined}
-            className={`grid grid-cols-[26px_minmax(0,1fr)_116px] items-center border-b py-8 max-md:grid-cols-[22px_minmax(0,1fr)] ${key ? 'border-ink bg-ochre-wash pr-9 pl-9 shadow-[inset_3px_0_0_var(--color-ochre)]' : 'border-rule'}`}
-          >
-            <span className="self-start font-semibold">{index + 1}</span>
-            <span className={`col-span-2 text-schedule max-md:col-span-1 ${key ? '' : 'text-ink-2'}`}>
-              <RichHtml text={title} />
-            </span>
-            <WideFormula
-              html={formulas[index] ?? ''}
-              title={title}
-              className={`col-start-2 min-w-0 overflow-x-auto overflow-y-hidden py-1 ${isLong(step) ? 'col-span-2 [&_.katex]:text-[0.95em]!' : '[&_.katex]:text-[1.06em]!'} max-md:col-span-2 max-md:col-start-1 [&_.katex-display]:m-0! [&_.katex-display]:text-left! [&_.katex-display>.katex]:text-left!`}
-            />
-            {display !== '' && (
-              <span
-                className={`col-start-3 text-right font-semibold whitespace-nowrap max-md:col-span-2 max-md:col-start-1 ${key ? 'text-[1.1875rem]' : 'text-[1rem]'}`}
-              >
-                {display} <small className="text-schedule font-normal text-ink-2">{unitText(unit)}</small>
-              </span>
-            )}
-            {note && (
-              <p className="col-span-2 col-start-2 mt-4 text-note text-ink-2">
-                <RichHtml text={note} />
-              </p>
-            )}
-            {charts.map((chart) => (
-              <p key={chart.id} className="col-span-2 col-start-2 mt-4 text-note text-ink-2 italic">
-                {chart.title}: {chart.source}
-              </p>
-            ))}
-          </li>
-        );
-      })}
+      {steps.map((step, index) => (
+        <Step key={step.id} steps={steps} index={index} html={formulas[index] ?? ''} />
+      ))}
     </ol>
   );
+}
+
+interface StepProps {
+  readonly steps: readonly DerivationStep[];
+  readonly index: number;
+  readonly html: string;
+}
+
+function Step({ steps, index, html }: StepProps) {
+  const step = steps[index];
+  if (!step) return null;
+  const { title, display, unit, note, key, charts = [] } = step;
+  return (
+    <li data-key-step={key ? '' : undefined} className={`${ROW} ${key ? KEY_ROW : 'border-rule'}`}>
+      <span className="self-start font-semibold">{index + 1}</span>
+      <span className={`col-span-2 text-schedule max-md:col-span-1 ${key ? '' : 'text-ink-2'}`}>
+        <RichHtml text={title} />
+      </span>
+      <WideFormula
+        html={html}
+        title={title}
+        className={`${FORMULA} ${isLong(step) ? 'col-span-2 [&_.katex]:text-[0.95em]!' : '[&_.katex]:text-[1.06em]!'}`}
+      />
+      {display !== '' && (
+        <span
+          className={`col-start-3 text-right font-semibold whitespace-nowrap max-md:col-span-2 max-md:col-start-1 ${key ? 'text-[1.1875rem]' : 'text-[1rem]'}`}
+        >
+          {display} <small className="text-schedule font-normal text-ink-2">{unitText(unit)}</small>
+        </span>
+      )}
+      {note && (
+        <p className="col-span-2 col-start-2 mt-4 text-note text-ink-2">
+          <RichHtml text={note} />
+        </p>
+      )}
+      {charts.map((chart) => (
+        <p key={chart.id} className="col-span-2 col-start-2 mt-4 text-note text-ink-2 italic">
+          {chart.title}: {originOf(steps, index, chart)}
+        </p>
+      ))}
+    </li>
+  );
+}
+
+/** Where a closed form comes from, in full where it is first used. */
+function originOf(
+  steps: readonly DerivationStep[],
+  index: number,
+  { id, source }: NonNullable<DerivationStep['charts']>[number],
+): string {
+  const first = steps.findIndex(({ charts }) => charts?.some((chart) => chart.id === id));
+  return first < index ? `as in step ${first + 1}` : source;
 }

@@ -9,7 +9,7 @@ import { Derivation } from './Derivation';
 import { RedundantChoice } from './RedundantChoice';
 import { type Release, releaseKey, toRedundant, toRelease } from './release';
 import { useLater, useNear } from './use-live';
-import { stepTex, type WorkedSteps } from './worked';
+import type { WorkedSteps } from './worked';
 
 /** A beam that was solved, with the letters of its template. */
 interface SolvedCase {
@@ -90,7 +90,7 @@ function redundantsOf({ beam, solution }: SolvedCase, releases: readonly Release
 type Kit = Awaited<ReturnType<typeof loadKit>>;
 
 function work(
-  { derive, setTex }: Kit,
+  { derive, setStep }: Kit,
   { beam, instance }: SolvedCase,
   redundants: readonly Redundant[],
 ): WorkedSteps {
@@ -99,5 +99,5 @@ function work(
     redundants,
     names: { lengths: instance.dimensions, loads: instance.loadNames },
   });
-  return { steps, formulas: steps.map((step) => setTex(stepTex(step))) };
+  return { steps, formulas: steps.map(setStep) };
 }

@@ -24,7 +24,7 @@ export function WideFormula({ html, title, className }: WideFormulaProps) {
   const focus = isWide ? { tabIndex: 0, role: 'group', 'aria-label': `Formula: ${title}` } : {};
   return (
     <div ref={place} {...focus} className={className}>
-      <Formula html={html} className="inline-block" />
+      <Formula html={html} className="block" />
     </div>
   );
 }

@@ -16,9 +16,9 @@ import { dayText, evaluatePage, type HistoryLine, type PickedSection, type Templ
 import { toRaw } from './raw';
 import { readReleases, toRedundant } from './release';
 import { pickSection } from './section-pick';
+import { setStep } from './set-step';
 import { readCatalogue, readTemplate, type TemplateRead } from './template.server';
 import { setTex } from './tex';
-import { stepTex } from './worked';
 
 type Viewer = Person & Tenant & { readonly practiceName: string; readonly unitSystem: UnitSystemName };
 
@@ -118,7 +118,7 @@ function workedAt(
   const redundants = releases?.map((release) => toRedundant(evaluation.beam, release));
   const isAdmissible = redundants && checkRedundants(evaluation.beam, redundants).length === 0;
   const steps = derivationOf(evaluation, isAdmissible ? redundants : undefined);
-  return { steps, formulas: steps.map((step) => setTex(stepTex(step))) };
+  return { steps, formulas: steps.map(setStep) };
 }
 
 function barredFor(viewer: Viewer, state: TemplateRead['row']['state']): string | null {

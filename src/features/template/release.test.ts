@@ -5,7 +5,7 @@ import { instanceAt, shippedTemplate, writtenTemplates } from '../../../tests/su
 import { fieldFaults, stopTitle, toCauses } from './faults';
 import { drawnName } from './names';
 import { readReleases, releaseChoices, releaseKey, toRedundant, toRelease } from './release';
-import { stepTex } from './worked';
+import { stepLines } from './set-step';
 
 function beamOf(slug: string, parameters = {}) {
   const reading = readBeam(instanceAt(shippedTemplate(slug), parameters).beam);
@@ -79,8 +79,13 @@ test('letters are drawn with their index lowered', () => {
 });
 
 test('a step whose numbers are long has them on a line of their own', () => {
-  const step = { id: 'x', title: '', value: 0, unit: '', display: '' } as const;
-  expect(stepTex({ ...step, symbols: 'R_B', numbers: '' })).toBe('R_B');
-  expect(stepTex({ ...step, symbols: 'R_B', numbers: '3' })).toBe('R_B = 3');
-  expect(stepTex({ ...step, symbols: 'R_B', numbers: '1+'.repeat(40) })).toContain('aligned');
+  expect(stepLines({ symbols: 'R_B', numbers: '' })).toEqual(['R_B']);
+  expect(stepLines({ symbols: 'R_B', numbers: '3' })).toEqual(['R_B=3']);
+  const long = '1+'.repeat(40);
+  expect(stepLines({ symbols: 'R_B', numbers: long })).toEqual(['R_B', `{}=${long}`]);
+});
+
+test('equations with numbers are equations of their own', () => {
+  const numbers = '\\begin{aligned}2R_{A}&=4\\end{aligned}';
+  expect(stepLines({ symbols: 'f', numbers })).toEqual(['f', numbers]);
 });

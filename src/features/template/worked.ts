@@ -9,17 +9,13 @@ export interface WorkedSteps {
 /** Signs beyond which a line of a derivation is broken before its numbers: what fits beside the result. */
 const LINE = 46;
 
-/** A step's formula: what it says in letters, then in numbers, on a line of their own where they are long. */
-export function stepTex({ symbols, numbers }: DerivationStep): string {
-  if (numbers === '') return symbols;
-  return signsIn(symbols) + signsIn(numbers) > LINE
-    ? `\\begin{aligned}&${symbols}\\\\[2pt]&\\quad=${numbers}\\end{aligned}`
-    : `${symbols} = ${numbers}`;
-}
-
 /** Whether a line of it does not fit beside the result, which then stands below. */
-export const isLong = ({ symbols, numbers }: DerivationStep): boolean =>
+export const isLong = ({ symbols, numbers }: Pick<DerivationStep, 'symbols' | 'numbers'>): boolean =>
   Math.max(signsIn(symbols), signsIn(numbers)) > LINE;
+
+/** Whether its letters and its numbers fit in one line. */
+export const isShort = ({ symbols, numbers }: Pick<DerivationStep, 'symbols' | 'numbers'>): boolean =>
+  signsIn(symbols) + signsIn(numbers) <= LINE;
 
 /** About as many signs as the formula is wide: a fraction is as wide as the longer of its halves. */
 const signsIn = (tex: string): number =>

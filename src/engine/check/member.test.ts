@@ -57,16 +57,18 @@ function checked({ loads, supports, length, criteria = steel, patterns = true }:
   );
   const acting = (combinations: readonly Combination[]) =>
     actingCombinations(combinations, groups, criteria.letters);
+  const strength = acting(criteria.strength.combinations);
+  const limits = criteria.deflection.flatMap((limit) =>
+    acting([limit.combination]).map((combination) => ({ ...limit, combination })),
+  );
   return checkMember({
     beam,
     superposed,
     section: IPE_300,
     criteria,
-    strength: superposed.combined(acting(criteria.strength.combinations)),
-    limits: criteria.deflection.flatMap((limit) =>
-      acting([limit.combination]).map((combination) => ({ ...limit, combination })),
-    ),
-    nameOf: arrangementNamer(beam, patterned),
+    strength: superposed.combined(strength),
+    limits,
+    nameOf: arrangementNamer(beam, patterned, [...strength, ...limits.map(({ combination }) => combination)]),
     system: 'metric',
   });
 }

@@ -1,6 +1,6 @@
 import { describe, expect, test } from 'vitest';
 import { type Load, readBeam, type SupportDocument } from '../model/index';
-import { actingCombinations, cutLoads, factoredLoads, groupsOf, regionsOf } from './index';
+import { actingCombinations, arrangementNamer, cutLoads, factoredLoads, groupsOf, regionsOf } from './index';
 
 function regions(length: number, supports: SupportDocument[]) {
   const reading = readBeam({ length, ei: 1, supports, horizontal: 'ignore' });
@@ -105,4 +105,37 @@ test('a combination is named by what acts in it, in the letters of the criteria'
   expect(actingCombinations(combinations, ['G', 'Q'], { G: 'D', Q: 'L' })).toEqual([
     { name: '1.2 D + 1.6 L', factors: { G: 1.2, Q: 1.6 } },
   ]);
+});
+
+describe('an arrangement is named', () => {
+  const reading = readBeam({
+    length: 9,
+    ei: 1,
+    supports: [roller(0), roller(3), roller(7)],
+    loads: [
+      { kind: 'line', from: 0, to: 9, w0: 1, w1: 1, group: 'Q' },
+      { kind: 'point', at: 8, p: 1, group: 'S' },
+    ],
+    horizontal: 'ignore',
+  });
+  if (!reading.ok) throw new Error(reading.faults[0]?.message);
+  const combinations = [
+    { name: '1.35 G', factors: { G: 1.35 } },
+    { name: 'G + 1.5 Q', factors: { G: 1, Q: 1.5 } },
+    { name: 'G + 1.5 S', factors: { G: 1, S: 1.5 } },
+  ];
+  const nameOf = arrangementNamer(reading.value, ['Q', 'S'], combinations);
+
+  test.each([
+    ['G + 1.5 Q', [0, 1, 2], 'G + 1.5 Q, all spans loaded'],
+    ['G + 1.5 Q', [0, 1], 'G + 1.5 Q, spans A–B and B–C loaded'],
+    ['G + 1.5 Q', [1, 2], 'G + 1.5 Q, span B–C and the overhang beyond C loaded'],
+    ['G + 1.5 Q', [2], 'G + 1.5 Q, overhang beyond C loaded'],
+    ['G + 1.5 Q', [], 'G + 1.5 Q, no span loaded'],
+    ['G + 1.5 S', [2], 'G + 1.5 S'], // its only place
+    ['G + 1.5 S', [], 'G + 1.5 S, no span loaded'],
+    ['1.35 G', [], '1.35 G'],
+  ])('%s with %j: %s', (combination, pattern, name) => {
+    expect(nameOf({ combination, pattern })).toBe(name);
+  });
 });

@@ -1,4 +1,5 @@
 import type { Beam } from '../model/index';
+import { type Combination, factorOf } from './combine';
 import { cutLoads } from './cut';
 import { type Region, regionsOf } from './regions';
 
@@ -6,18 +7,24 @@ import { type Region, regionsOf } from './regions';
 export type ArrangementNamer = (of: { combination: string; pattern: readonly number[] }) => string;
 
 /**
- * "1.35 G + 1.5 Q, spans A–B and C–D loaded", in the letters of the drawing. Where the patterned groups stand on one
- * span at most, the combination alone says it, unless that span is not loaded.
+ * "1.35 G + 1.5 Q, spans A–B and C–D loaded", in the letters of the drawing. The combination alone says it where its
+ * patterned groups stand nowhere, or on one span and that is loaded.
  */
 export function arrangementNamer(
   beam: Pick<Beam, 'length' | 'supports' | 'loads'>,
   patterns: readonly string[],
+  combinations: readonly Combination[],
 ): ArrangementNamer {
   const spans = regionsOf(beam);
   const patterned = beam.loads.filter(({ group }) => group !== undefined && patterns.includes(group));
-  const carrying = [...new Set(cutLoads(patterned, spans).map(({ span }) => span))];
+  const carrying = new Map(
+    combinations.map((combination) => {
+      const acting = patterned.filter(({ group = '' }) => factorOf(combination, group) !== 0);
+      return [combination.name, [...new Set(cutLoads(acting, spans).map(({ span }) => span))]];
+    }),
+  );
   return ({ combination, pattern }) => {
-    const words = patternWords(spans, carrying, pattern);
+    const words = patternWords(spans, carrying.get(combination) ?? [], pattern);
     return words === '' ? combination : `${combination}, ${words}`;
   };
 }

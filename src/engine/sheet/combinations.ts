@@ -1,8 +1,13 @@
 import type { Pattern } from '../check/index';
-import { actingCombinations, type Combination, groupsOf } from '../combination/index';
+import {
+  type ArrangementNamer,
+  actingCombinations,
+  arrangementNamer,
+  type Combination,
+  groupsOf,
+} from '../combination/index';
 import { arrangementCount, envelopeTask } from '../envelope/index';
 import { groupText } from './givens';
-import { figureColumn } from './results';
 import type { SheetBlock, SheetInput, SheetRow } from './types';
 
 /** How the groups stand on the member, what was run, and what was not, with the reason of each. */
@@ -24,7 +29,7 @@ export function combinationBlocks(input: SheetInput): SheetBlock[] {
     {
       kind: 'table',
       name: 'Combinations run',
-      columns: [{ title: 'For' }, { title: 'Combination' }, figureColumn('Arrangements', '')],
+      columns: [{ title: 'For' }, { title: 'Combination' }, { title: 'Arrangements', figures: true }],
       rows: run,
     },
     { kind: 'text', tone: 'note', text: standingText(patterning) },
@@ -40,6 +45,14 @@ export function combinationBlocks(input: SheetInput): SheetBlock[] {
       : []),
   ];
 }
+
+/** Names the loads behind the figures of a stored result. */
+export const namerOf = ({ beam, patterning, strength, service }: SheetInput['result']): ArrangementNamer =>
+  arrangementNamer(
+    beam,
+    patterning.groups,
+    [...strength, ...service].map(({ combination }) => combination),
+  );
 
 /** How many arrangements of loads stand behind a combination: every set of the spans that carry what it patterns. */
 function countIn({ beam, patterning }: SheetInput['result']) {

@@ -1,6 +1,7 @@
-import { type ArrangementNamer, arrangementNamer } from '../combination/index';
+import type { ArrangementNamer } from '../combination/index';
 import type { Governing } from '../envelope/index';
 import { type LetteredSupport, letteredSupports } from '../model/index';
+import { namerOf } from './combinations';
 import type { Figures } from './figures';
 import { figureColumn } from './results';
 import type { Cell, SheetBlock, SheetColumn, SheetInput, SheetRow } from './types';
@@ -16,40 +17,56 @@ type Held = {
 
 /** Reactions by group, unfactored, to hand on; then their range over the strength combinations. */
 export function reactionBlocks({ result }: SheetInput, figures: Figures): SheetBlock[] {
-  const { beam, groups, group_reactions: ranges, total, strength, checks, patterning } = result;
-  const nameOf = arrangementNamer(beam, patterning.groups);
+  const { beam, groups, total, strength, checks } = result;
+  const nameOf = namerOf(result);
   const held = letteredSupports(beam).flatMap((support) => heldBy(support, figures));
   const columns: SheetColumn[] = [
     { title: 'Reaction' },
     { title: 'Unit' },
-    ...groups.flatMap(({ group }) => [
-      figureColumn(group === 'movements' ? 'Movements' : group, ''),
-      ...(patterning.groups.includes(group)
-        ? [figureColumn(`${group} most`, ''), figureColumn(`${group} least`, '')]
-        : []),
-    ]),
+    ...groups.map(({ group }) => figureColumn(group === 'movements' ? 'Movements' : group, '')),
     figureColumn('All together', ''),
   ];
   const rows = held.map(({ tex, unit, support, component, text }): SheetRow => {
-    const values = groups.flatMap(({ group, solution }) => {
-      const range = ranges[support]?.[group]?.[component];
-      const whole = solution.reactions[support]?.[component] ?? 0;
-      return typeof range === 'object' ? [whole, range.max, range.min] : [whole];
-    });
-    return { cells: [{ tex }, unit, ...[...values, total.reactions[support]?.[component] ?? 0].map(text)] };
+    const values = [...groups.map(({ solution }) => solution), total].map(
+      ({ reactions }) => reactions[support]?.[component] ?? 0,
+    );
+    return { cells: [{ tex }, unit, ...values.map(text)] };
   });
   return [
     { kind: 'table', name: 'Reactions by group, unfactored', columns, rows },
     {
       kind: 'text',
       tone: 'note',
-      text: `Unfactored, to be handed on by group. Up and anticlockwise on the beam are positive; uplift is negative and named.${patterning.groups.length > 0 ? ' Most and least: of the adverse spans alone.' : ''}`,
+      text: 'Unfactored, to be handed on by group. Up and anticlockwise on the beam are positive; uplift is negative and named.',
     },
+    ...patternedTable(held, result),
     ...(strength.length === 0 ? [] : [rangeTable(held, strength, nameOf)]),
     ...(checks?.findings ?? []).map(
       ({ title, detail }): SheetBlock => ({ kind: 'text', tone: 'warning', text: `${title}: ${detail}` }),
     ),
   ];
+}
+
+/** Of the groups that act only where adverse: each support's most and least, with the other spans unloaded. */
+function patternedTable(
+  held: readonly Held[],
+  { patterning, group_reactions: ranges }: SheetInput['result'],
+): SheetBlock[] {
+  const { groups } = patterning;
+  if (groups.length === 0) return [];
+  const rows = held.map(({ tex, unit, support, component, text }): SheetRow => {
+    const values = groups.flatMap((group) => {
+      const range = ranges[support]?.[group]?.[component];
+      return typeof range === 'object' ? [range.max, range.min] : [0, 0];
+    });
+    return { cells: [{ tex }, unit, ...values.map(text)] };
+  });
+  const columns: SheetColumn[] = [
+    { title: 'Adverse spans alone' },
+    { title: 'Unit' },
+    ...groups.flatMap((group) => [figureColumn(`${group} most`, ''), figureColumn(`${group} least`, '')]),
+  ];
+  return [{ kind: 'table', name: 'Reactions of groups that act where adverse, unfactored', columns, rows }];
 }
 
 function heldBy({ support, letter, index }: LetteredSupport, figures: Figures): Held[] {

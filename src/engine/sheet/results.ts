@@ -1,5 +1,6 @@
 import type { Extremes } from '../beam/index';
-import { type ArrangementNamer, arrangementNamer } from '../combination/index';
+import type { ArrangementNamer } from '../combination/index';
+import { namerOf } from './combinations';
 import { type Figures, shareText } from './figures';
 import { groupText } from './givens';
 import type { SheetBlock, SheetColumn, SheetInput, SheetRow } from './types';
@@ -19,7 +20,7 @@ export function resultBlocks({ result, criteria }: SheetInput, figures: Figures)
   ];
   const combined = (list: typeof strength): Loaded[] =>
     list.map(({ combination, extremes }) => ({ name: combination.name, extremes }));
-  const nameOf = arrangementNamer(result.beam, result.patterning.groups);
+  const nameOf = namerOf(result);
   return [
     forcesTable([...unfactored, ...combined(strength)], figures),
     ...(criteria

@@ -89,7 +89,7 @@ export function solveMember(
     service,
     patterning: { groups: patterned, arrangements: arrangementCount({ sources, combinations }) },
     superposed,
-    nameOf: arrangementNamer(beam, patterned),
+    nameOf: arrangementNamer(beam, patterned, combinations),
     arrangementBeam: (of) => ({ ...beam, loads: loadsOf(of) }),
     solveArrangement: (of) => prepared.solve(loadsOf(of)),
     solved: [...new Set([...cases, ...groups.map(({ solved }) => solved), total])],

@@ -166,11 +166,19 @@ describe('a sheet', () => {
 
   test('gives reactions by group, which add up to those of all together within their rounding', () => {
     for (const [, , ...values] of textsOf(blocks, 'Reactions by group, unfactored')) {
-      const [g = Number.NaN, s = Number.NaN, most = Number.NaN, least = Number.NaN, together = Number.NaN] =
-        values.map((value) => Number(value.replace('−', '-').replace('\u00a0uplift', '')));
+      const [g = Number.NaN, s = Number.NaN, together = Number.NaN] = values.map(Number);
       expect(Math.abs(g + s - together)).toBeLessThan(0.11);
-      expect(Math.abs(most + least - s)).toBeLessThan(0.16);
     }
+  });
+
+  // Uniform load on the span: wL·3/8 to the prop; on the overhang: wa(1 + 3a/4L), all of it upward.
+  test('gives the most and the least of snow, which acts only where adverse', () => {
+    const rows = textsOf(blocks, 'Reactions of groups that act where adverse, unfactored');
+    const prop = rows.find(([letter]) => letter === 'R_{B}');
+    const most = (3 * 3.6 * 6) / 8 + 3.6 * 1.8 * (1 + (3 * 1.8) / (4 * 6));
+    expect(prop?.slice(2)).toEqual([most.toFixed(1), '0.0']);
+    const fixed = rows.find(([letter]) => letter === 'R_{A}');
+    expect(fixed?.[3]).toMatch(/^−\d\.\d\u00a0uplift$/);
   });
 
   test('lists how the groups act, the combinations run with their arrangements, and those not run', () => {

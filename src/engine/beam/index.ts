@@ -1,10 +1,10 @@
-export { AXIAL_LIMIT, type AxialScope, axialScope } from './axial';
+export { AXIAL_LIMIT, axialScope } from './axial';
 export { type Datum, deflectionFrom, isOverhang } from './datum';
 export { type ForceMethodParts, forceMethod, releasedBeam } from './force-method';
-export { type ShearShare, shearShare } from './shear-share';
+export { shearShare } from './shear-share';
 export { type PreparedBeam, prepareBeam, solveBeam } from './solve';
-export { type Span, spansOf } from './spans';
+export { spansOf } from './spans';
 export { stationPositions, stationsAt } from './stations';
-export { type TipParts, tipParts } from './tip';
+export { tipParts } from './tip';
 export type * from './types';
 export { zeroShear } from './zero-shear';

@@ -1,5 +1,5 @@
 export { type AbsoluteMoment, absoluteMoment } from './absolute-moment';
-export { areasUnder, influenceLine } from './line';
+export { influenceLine } from './line';
 export { type AskedQuantity, readInfluenceQuantity } from './quantity';
 export { readWheels } from './read-wheels';
 export { type Direction, type TrainExtreme, type Wheel, worstTrain } from './train';

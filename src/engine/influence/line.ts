@@ -64,7 +64,7 @@ function cubicOf(curve: Piecewise, sense: number): Piecewise {
 }
 
 /** The areas under a line, span by span, what lies above the axis apart from what lies below it. */
-export function areasUnder(beam: Beam, line: Piecewise): SpanArea[] {
+function areasUnder(beam: Beam, line: Piecewise): SpanArea[] {
   const integral = integrate(line);
   const crossings = [...line.breaks, ...signChanges(line)];
   return spansOf(beam).map(({ from, to }) => {

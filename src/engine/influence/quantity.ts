@@ -1,4 +1,4 @@
-import { type Beam, COINCIDENT, type Fault, type Reading } from '../model/index';
+import { type Beam, COINCIDENT, type Fault, metres, type Reading } from '../model/index';
 import type { InfluenceQuantity, Side } from './types';
 
 /** A quantity as it is asked for: without a side the section is just right of `at`. */
@@ -20,7 +20,7 @@ export function readInfluenceQuantity(beam: Beam, asked: AskedQuantity): Reading
   const { length } = beam;
   const tolerance = COINCIDENT * length;
   if (!(asked.at >= -tolerance && asked.at <= length + tolerance)) {
-    const message = `The section is off the beam. Give a position from 0 to ${length} m.`;
+    const message = `The section is off the beam. Give a position from 0 to ${metres(length)}.`;
     return refused(['at'], 'out_of_range', message);
   }
   const points = [0, length, ...beam.supports.map(({ at }) => at), ...beam.hinges];

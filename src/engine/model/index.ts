@@ -11,4 +11,4 @@ export {
 } from './redundants';
 export { findMotion, frameOf, type MovingPart, riseOf } from './stability';
 export * from './types';
-export { nameRedundant, nameSupport } from './words';
+export { metres, nameRedundant, nameSupport } from './words';

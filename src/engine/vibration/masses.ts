@@ -1,4 +1,4 @@
-import { type Beam, COINCIDENT, type Fault, type Load, type Reading } from '../model/index';
+import { type Beam, COINCIDENT, type Fault, type Load, metres, type Reading } from '../model/index';
 import { STANDARD_GRAVITY } from '../quantity/index';
 import type { DistributedMass, LumpedMass, Masses } from './types';
 
@@ -48,7 +48,7 @@ export function readMasses({ length }: Beam, masses: Masses): Reading<Masses> {
     faults.push({ path, code, message });
   const position = (x: number, path: Fault['path']) => {
     if (x >= -COINCIDENT * length && x <= length * (1 + COINCIDENT)) return;
-    fail(path, 'out_of_range', `The mass is off the beam. Give a position from 0 to ${length} m.`);
+    fail(path, 'out_of_range', `The mass is off the beam. Give a position from 0 to ${metres(length)}.`);
   };
   const size = (value: number, path: Fault['path']) => {
     if (!(value >= 0)) fail(path, 'out_of_range', 'A mass cannot be less than zero.');

@@ -15,7 +15,7 @@ import type { StandingTrain } from './influence-layout';
 import { Part } from './Part';
 import { placeEntry } from './place-entry';
 import { QuantityInput } from './QuantityInput';
-import { ordinateText, type Script, scriptFor, stationText, titleOf, unitLoad } from './script';
+import { lengthText, ordinateText, type Script, scriptFor, stationText, titleOf, unitLoad } from './script';
 import { TrainPart } from './TrainPart';
 import { useTrain } from './use-train';
 
@@ -67,7 +67,7 @@ export const InfluencePanel = memo(function InfluencePanel({ beam, system }: Inf
                   label="Section, from the left end"
                   dimension="length"
                   entry={entry}
-                  error={isOfSection ? fault?.message : undefined}
+                  error={isOfSection ? offBeam(beam, system) : undefined}
                   onChange={setTyped}
                 />
               </div>
@@ -85,6 +85,10 @@ export const InfluencePanel = memo(function InfluencePanel({ beam, system }: Inf
     </>
   );
 });
+
+/** The engine says it in metres. */
+const offBeam = ({ length }: Beam, system: UnitSystemName): string =>
+  `The section is off the beam. Give a position from 0 to ${lengthText(length, system)}.`;
 
 /** The middle of the longest span: where a person looks first. */
 function middleOf(beam: Beam): number {

@@ -48,7 +48,7 @@ const movementText = (size: number, system: UnitSystemName): string =>
 const signedText = (deflection: number, system: UnitSystemName): string =>
   movementText(toScreen('deflection', deflection) + 0, system);
 
-export interface TipLine {
+interface TipLine {
   readonly name: string;
   readonly text: string;
 }

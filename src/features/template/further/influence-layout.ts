@@ -22,7 +22,7 @@ const LABEL_SIZE = 13;
 const HATCH = { shear: [90, 5], moment: [-45, 6], slope: [0, 4], deflection: [45, 7] } as const;
 
 /** A wheel on the beam: where it stands, and the ordinate under it. */
-export interface WheelMark {
+interface WheelMark {
   readonly place: number;
   readonly x: number;
   readonly y: number;

@@ -1,4 +1,4 @@
-import type { DerivationStep } from '../derivation/index';
+import { type DerivationStep, joinedNumbers } from '../derivation/index';
 import { type Purpose, type UnitSystemName, unitText } from '../quantity/index';
 import { figuresOf } from './figures';
 import type { SheetBlock, SheetFigure, SheetInput } from './types';
@@ -20,14 +20,20 @@ export function derivationBlocks({ result, system }: SheetInput): SheetBlock[] {
   return [
     {
       kind: 'text',
-      text: `Under all loads together, unfactored. Worked in kN, m and mm${system === 'us' ? '; results also in US units' : ''}.`,
+      text: `Under all loads together, unfactored. Worked in ${workedIn(steps, system)}.`,
     },
     ...steps.map((step, index) => stepBlock(step, index, system)),
   ];
 }
 
+/** Those that were stored before a derivation was worked in the job's own units are in kN, m and mm. */
+function workedIn(steps: readonly DerivationStep[], system: UnitSystemName): string {
+  if (steps.some(({ unit }) => unit.startsWith('kip'))) return 'kip, ft and in';
+  return `kN, m and mm${system === 'us' ? '; results also in US units' : ''}`;
+}
+
 function stepBlock(step: DerivationStep, index: number, system: UnitSystemName): SheetBlock {
-  const { title, symbols, numbers, note, charts } = step;
+  const { title, symbols, note, charts } = step;
   const origin = [...new Set((charts ?? []).map(({ title: name, source }) => `${name}: ${source}`))].join(
     '; ',
   );
@@ -37,7 +43,7 @@ function stepBlock(step: DerivationStep, index: number, system: UnitSystemName):
     results: resultsOf(step, system),
     title,
     symbols,
-    numbers: numbers === '' ? '' : `=${numbers}`,
+    numbers: joinedNumbers(step),
     ...(origin !== '' && { origin }),
     ...(note !== undefined && { note }),
   };

@@ -20,12 +20,16 @@ export interface Assessment extends TriedView {
 /** As the database gives it back: without undefined, typed arrays as lists. */
 const plain = <T>(value: T): T => JSON.parse(JSON.stringify(value));
 
-/** With the redundants that the stored solution was found by, and the template's letters. */
-const derivationOf = ({ beam, total, instance }: MemberEvaluation): DerivationStep[] =>
+/** With the redundants that the stored solution was found by, and the template's letters; in the job's units. */
+const derivationOf = (
+  { beam, total, instance }: MemberEvaluation,
+  system: UnitSystemName,
+): DerivationStep[] =>
   derive({
     beam,
     redundants: total.forceMethod.redundants,
     names: { lengths: instance.dimensions, loads: instance.loadNames },
+    system,
   });
 
 /**
@@ -50,7 +54,7 @@ export function assessMember(pins: Pins, given: Given, system: UnitSystemName): 
     );
   const found = toStoredResult(reading.evaluation);
   const result = plain(
-    found.kind === 'result' ? { ...found, derivation: derivationOf(reading.evaluation) } : found,
+    found.kind === 'result' ? { ...found, derivation: derivationOf(reading.evaluation, system) } : found,
   );
   const content = {
     inputs: { ...given, system, material: section?.material.id ?? null },

@@ -52,6 +52,7 @@ function sheetOf({ slug = SLUG, parameters, system = 'metric', isChecked = false
     beam,
     redundants: total.forceMethod.redundants,
     names: { lengths: instance.dimensions, loads: instance.loadNames },
+    system,
   });
   const stored = toStoredResult(reading.evaluation);
   if (stored.kind === 'fault') throw new Error(stored.message);

@@ -4,6 +4,7 @@ import { PictureEquation } from '@/components/drawing/PictureEquation';
 import { ZoneHeading } from '@/components/ui/ZoneHeading';
 import { forceMethod, type Solution } from '@/engine/beam';
 import { type Beam, checkRedundants, type Redundant } from '@/engine/model';
+import type { UnitSystemName } from '@/engine/quantity';
 import type { Instance } from '@/engine/template';
 import { Derivation } from './Derivation';
 import { RedundantChoice } from './RedundantChoice';
@@ -23,6 +24,8 @@ interface ForceMethodProps {
   readonly solved: SolvedCase;
   /** What the person released; null for the template's own choice. */
   readonly releases: readonly Release[] | null;
+  /** What it is worked in. */
+  readonly system: UnitSystemName;
   readonly onChoose: (releases: readonly Release[]) => void;
   /** Shown until the script that works them is here. */
   readonly initial: WorkedSteps;
@@ -38,6 +41,7 @@ const loadKit = () => import('./derivation-kit');
 export const ForceMethod = memo(function ForceMethod({
   solved,
   releases,
+  system,
   onChoose,
   initial,
   note = 'With these numbers',
@@ -51,7 +55,10 @@ export const ForceMethod = memo(function ForceMethod({
     () => forceMethodPictures(beam, forceMethod(beam, redundants), solution),
     [beam, solution, redundants],
   );
-  const worked = useMemo(() => kit && work(kit, solved, redundants), [kit, solved, redundants]);
+  const worked = useMemo(
+    () => kit && work(kit, solved, redundants, system),
+    [kit, solved, redundants, system],
+  );
   const shown = worked ?? initial;
   const chosen = releaseKey(redundants.flatMap((one) => toRelease(beam, one) ?? []));
   return (
@@ -93,11 +100,13 @@ function work(
   { derive, setStep }: Kit,
   { beam, instance }: SolvedCase,
   redundants: readonly Redundant[],
+  system: UnitSystemName,
 ): WorkedSteps {
   const steps = derive({
     beam,
     redundants,
     names: { lengths: instance.dimensions, loads: instance.loadNames },
+    system,
   });
   return { steps, formulas: steps.map(setStep) };
 }

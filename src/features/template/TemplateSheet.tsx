@@ -146,6 +146,7 @@ function LowerZones({ data, page, action, axial }: LowerProps) {
         <ForceMethod
           solved={rested}
           releases={page.releases}
+          system={data.system}
           onChoose={page.setReleases}
           initial={data.worked}
           note={note}

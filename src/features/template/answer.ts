@@ -1,5 +1,6 @@
 import { type DerivationStep, derive, SI_UNITS } from '@/engine/derivation';
 import type { Redundant } from '@/engine/model';
+import type { UnitSystemName } from '@/engine/quantity';
 import { toSolveAnswer } from '@/features/beam/solve';
 import type { TemplateEvaluation } from './evaluate';
 import type { EvaluateAnswer } from './request';
@@ -8,11 +9,13 @@ import type { EvaluateAnswer } from './request';
 export const derivationOf = (
   { beam, instance }: TemplateEvaluation,
   redundants: readonly Redundant[] | undefined = instance.beam.redundants,
+  system?: UnitSystemName,
 ): DerivationStep[] =>
   derive({
     beam,
     redundants,
     names: { lengths: instance.dimensions, loads: instance.loadNames },
+    system,
   });
 
 /** The answer of POST /api/v1/templates/{slug}/evaluate. A rule that nothing is known for yet is left out. */

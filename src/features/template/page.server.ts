@@ -117,7 +117,7 @@ function workedAt(
   const { evaluation } = outcome;
   const redundants = releases?.map((release) => toRedundant(evaluation.beam, release));
   const isAdmissible = redundants && checkRedundants(evaluation.beam, redundants).length === 0;
-  const steps = derivationOf(evaluation, isAdmissible ? redundants : undefined);
+  const steps = derivationOf(evaluation, isAdmissible ? redundants : undefined, system);
   return { steps, formulas: steps.map(setStep) };
 }
 

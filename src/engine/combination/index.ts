@@ -5,8 +5,8 @@ export {
   factorOf,
   type GroupLetters,
 } from './combine';
-export { cutLoads, type SpanLoad } from './cut';
-export { groupsOf, LOAD_GROUP_NAMES, LOAD_GROUPS, type LoadGroup } from './groups';
+export { cutLoads } from './cut';
+export { groupsOf, LOAD_GROUP_NAMES, LOAD_GROUPS } from './groups';
 export { stillBeam, supportsMove } from './movements';
 export { type Region, regionsOf } from './regions';
 export { type ArrangementNamer, arrangementNamer } from './words';

@@ -1,4 +1,4 @@
-export { arrangementLoads, type LoadArrangement } from './arrangement';
+export { arrangementLoads } from './arrangement';
 export { type EnvelopeDocument, type EnvelopeTask, envelopeTask, readEnvelope } from './read';
 export { arrangementCount } from './resting';
 export { type EnvelopeSolution, type SolvedCase, solveEnvelope, solveSources } from './solve';

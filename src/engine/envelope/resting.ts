@@ -42,7 +42,7 @@ export function restingEnvelope(
 }
 
 /** Every combination with every set of its spans that carry patterned loads, the empty set first. */
-export function arrangementsOf({ sources, combinations }: EnvelopeTask): LoadArrangement[] {
+function arrangementsOf({ sources, combinations }: EnvelopeTask): LoadArrangement[] {
   return combinations.flatMap((combination) => {
     const acting = sources.filter(({ group }) => group !== null && factorOf(combination, group) !== 0);
     const spans = [...new Set(acting.flatMap(({ span }) => (span === null ? [] : [span])))];

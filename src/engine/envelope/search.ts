@@ -84,10 +84,11 @@ export class ExtremeSearch {
   private search({ inside, best }: Bounds, first: number, last: number, sense: Sense): Found {
     const pieces = this.curves.breaks.length - 1;
     const open = inside.slice(first * pieces, last * pieces);
+    const nothing = NOTHING * this.size;
     let found = best[first]!;
-    for (let c = first + 1; c < last; c++) if (best[c]!.value > found.value) found = best[c]!;
+    for (let c = first + 1; c < last; c++) if (best[c]!.value > found.value + nothing) found = best[c]!;
     for (;;) {
-      let [next, most] = [-1, found.value + NOTHING * this.size];
+      let [next, most] = [-1, found.value + nothing];
       for (let i = 0; i < open.length; i++) {
         if (open[i]! > most) {
           most = open[i]!;
@@ -99,9 +100,11 @@ export class ExtremeSearch {
       const piece = next % pieces;
       const combination = first + (next - piece) / pieces;
       this.piece.find(piece, combination, sense);
-      if (this.piece.value > found.value) {
-        found = { value: this.piece.value, piece, t: this.piece.t, combination };
-      }
+      const { value, t } = this.piece;
+      // Of equals the first combination and the leftmost piece, whatever their rounding.
+      const isEarlier =
+        combination < found.combination || (combination === found.combination && piece < found.piece);
+      if (value > found.value + (isEarlier ? -nothing : nothing)) found = { value, piece, t, combination };
     }
   }
 
@@ -117,7 +120,7 @@ export class ExtremeSearch {
 const newBounds = (combinations: number, pieces: number): Bounds => ({
   inside: new Float64Array(combinations * pieces).fill(Number.NEGATIVE_INFINITY),
   best: Array.from({ length: combinations }, (_, combination) => ({
-    value: Number.NEGATIVE_INFINITY,
+    value: -Number.MAX_VALUE,
     piece: 0,
     t: 0,
     combination,
@@ -125,7 +128,7 @@ const newBounds = (combinations: number, pieces: number): Bounds => ({
 });
 
 function improve(best: Found, value: number, piece: number, t: number): void {
-  if (!(value > best.value)) return;
+  if (!(value > best.value + NOTHING * Math.abs(best.value))) return;
   best.value = value;
   best.piece = piece;
   best.t = t;

@@ -42,7 +42,7 @@ export type Envelope = {
   reactions: EnvelopeReaction[];
 };
 
-export type { Diagrams, Reaction };
+export type { Diagrams };
 
 /** What one combination comes to over all patterns of its loads. */
 export type CombinationEnvelope = { readonly combination: Combination } & Pick<

@@ -27,7 +27,7 @@ export const MOVEMENTS = 'movements';
 /** One combination with the loads of the spans in its pattern, all at once. */
 export type MemberArrangement = { readonly combination: Combination; readonly pattern: readonly number[] };
 
-export type ServiceEnvelope = CombinationEnvelope & { readonly limit: DeflectionLimit };
+type ServiceEnvelope = CombinationEnvelope & { readonly limit: DeflectionLimit };
 
 /** Which groups act only where adverse, and how many arrangements of loads that makes. */
 export type Patterning = { readonly groups: readonly string[]; readonly arrangements: number };

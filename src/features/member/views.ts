@@ -21,7 +21,7 @@ interface DrawnEnvelope {
   readonly note: string;
 }
 
-export interface Drawn {
+interface Drawn {
   readonly solution: Solution;
   readonly envelopes?: { readonly [Q in 'shear' | 'moment' | 'deflection']?: DrawnEnvelope };
   readonly reactions?: readonly {

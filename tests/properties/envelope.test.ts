@@ -2,12 +2,14 @@ import fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
 import { type Solution, solveBeam, stationPositions, stationsAt } from '@/engine/beam/index';
 import type { Combination } from '@/engine/combination/index';
+import { continuousBeam } from '@/engine/continuous/index';
 import {
   type Envelope,
   type EnvelopeDocument,
   type Governing,
   QUANTITIES,
   readEnvelope,
+  SuperposedBeam,
   solveEnvelope,
 } from '@/engine/envelope/index';
 import { type Beam, type Load, readBeam } from '@/engine/model/index';
@@ -192,6 +194,39 @@ describe('the envelope of any beam', { timeout: 120_000 }, () => {
       }),
       RUNS,
     );
+  });
+
+  test('is the same from the fast solver of continuous beams', () => {
+    let compared = 0;
+    fc.assert(
+      fc.property(anyCase, ({ document, beam: { length } }) => {
+        const task = readEnvelope(document);
+        const fast = task.ok ? continuousBeam(task.value.beam) : null;
+        if (!task.ok || !fast) return;
+        compared++;
+        const { sources, combinations } = task.value;
+        const elementary = sources.map(({ group, loads }) => {
+          fast.solve(loads, { movements: group === null });
+          return { diagrams: fast.diagrams(), reactions: fast.reactions() };
+        });
+        const positions = stationPositions({ length }, 9);
+        const exact = envelopeOf(document, positions);
+        const found = new SuperposedBeam(sources, elementary).envelope(combinations, positions);
+        for (const quantity of QUANTITIES) {
+          const { max, min } = exact.extremes[quantity];
+          const room = 1e-9 * Math.max(Math.abs(max.value), Math.abs(min.value));
+          expect(Math.abs(found.extremes[quantity].max.value - max.value)).toBeLessThanOrEqual(room);
+          expect(Math.abs(found.extremes[quantity].min.value - min.value)).toBeLessThanOrEqual(room);
+          exact.stations.forEach(({ [quantity]: range }, i) => {
+            const other = found.stations[i]![quantity];
+            expect(Math.abs(other.max.value - range.max.value)).toBeLessThanOrEqual(room);
+            expect(Math.abs(other.min.value - range.min.value)).toBeLessThanOrEqual(room);
+          });
+        }
+      }),
+      runs(60),
+    );
+    expect(compared).toBeGreaterThan(10);
   });
 
   test('gives the groups’ own reactions, which add up to those of whole combinations', () => {

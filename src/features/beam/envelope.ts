@@ -19,8 +19,11 @@ import { toSolveAnswer, unproven, unsolvable } from './solve';
 export { envelopeAnswer } from './envelope-answer';
 export { envelopeRequest } from './envelope-request';
 
-/** Beyond these a request would keep others waiting: solved cases times the points of the beam, and stations answered. */
-const MOST_WORK = 12_000;
+/**
+ * Beyond these a request would keep others waiting: cases times the points of the beam, of load cases to be added up and
+ * of arrangements to be solved anew, and stations of whole arrangements.
+ */
+const MOST_WORK = { added: 25_000, anew: 12_000 } as const;
 const MOST_STATIONS = 50_000;
 
 export type EnvelopeOutcome = { ok: true; answer: EnvelopeAnswer } | { ok: false; errors: Fault[] };
@@ -65,13 +68,13 @@ const isSound = ({ solved }: EnvelopeSolution): boolean =>
 
 function workFault(task: EnvelopeTask): ModelFault | undefined {
   const points = pointsOf(task.beam).length;
-  const cases = task.sources.length + (task.liftOff.length > 0 ? arrangementCount(task) : 0);
-  if (cases * points <= MOST_WORK) return undefined;
-  const most = Math.floor(MOST_WORK / points);
-  const why =
-    task.liftOff.length > 0
-      ? `With supports that cannot pull, these combinations and patterns are ${cases} cases to solve one by one`
-      : `These groups and pattern spans are ${cases} cases to solve`;
+  const isAnew = task.liftOff.length > 0;
+  const cases = task.sources.length + (isAnew ? arrangementCount(task) : 0);
+  const most = Math.floor(MOST_WORK[isAnew ? 'anew' : 'added'] / points);
+  if (cases <= most) return undefined;
+  const why = isAnew
+    ? `With supports that cannot pull, these combinations and patterns are ${cases} cases to solve one by one`
+    : `These groups and pattern spans are ${cases} cases to solve`;
   const message = `${why}; at most ${most} are possible for a beam of ${points} points. Pattern fewer groups, or leave out combinations, spans or loads.`;
   return { path: ['combinations'], code: 'out_of_range', message };
 }
@@ -83,7 +86,7 @@ function arrangementAnswers(
 ): Reading<NonNullable<EnvelopeAnswer['arrangements']>> {
   const count = solved.governing.length;
   const points = pointsOf(task.beam).length;
-  if (count * points > MOST_WORK || count * positions.length > MOST_STATIONS) {
+  if (count * points > MOST_WORK.anew || count * positions.length > MOST_STATIONS) {
     const message = `${count} arrangements govern something, too many to answer whole. Ask for fewer stations, or leave arrangements out.`;
     return { ok: false, faults: [{ path: ['arrangements'], code: 'out_of_range', message }] };
   }

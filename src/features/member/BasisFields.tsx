@@ -80,15 +80,18 @@ function Patterns({
   criteria,
   onChange,
 }: Pick<BasisFieldsProps, 'draft' | 'onChange'> & { readonly criteria: CriteriaChoice | undefined }) {
-  const groups = (criteria?.document.patterns ?? []).flatMap(({ group, where_adverse }) =>
-    where_adverse ? [criteria?.document.letters?.[group] ?? group] : [],
-  );
-  if (groups.length === 0) return null;
+  const patterned = (criteria?.document.patterns ?? [])
+    .filter(({ where_adverse }) => where_adverse)
+    .map(({ group, basis }) => ({ letter: criteria?.document.letters?.[group] ?? group, basis }));
+  if (patterned.length === 0) return null;
   return (
     <>
       <Checkbox checked={draft.patterns} onChange={(event) => onChange({ patterns: event.target.checked })}>
-        {groups.join(' and ')} only on the spans where adverse
+        {patterned.map(({ letter }) => letter).join(' and ')} only on the spans where adverse
       </Checkbox>
+      <p className="text-note text-ink-2">
+        {patterned.map(({ letter, basis }) => `${letter}: ${basis}.`).join(' ')}
+      </p>
       {!draft.patterns && (
         <Field
           label="On the whole length because"

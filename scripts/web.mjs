@@ -23,8 +23,7 @@ server.listen(port, host, () => {
 });
 
 function stop() {
-  server.close(() => process.exit(0));
-  server.closeIdleConnections();
+  server.drain(() => process.exit(0));
   setTimeout(() => process.exit(0), DRAIN * 1000).unref();
 }
 

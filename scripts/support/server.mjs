@@ -18,10 +18,14 @@ export function createWebServer({ handler, folder, origin, proxies = '' }) {
     setHeaders: (response, path) => response.setHeader('Cache-Control', lifeOf(path)),
   });
 
+  /** Answers without an end of their own. */
+  const streams = new Set();
+
   const serve = (request, response) => {
     beforeHead(response, () => {
       sayCharset(response);
       if (!server.listening) response.setHeader('Connection', 'close');
+      if (isStream(response)) hold(response);
     });
     const address = clientAddress(request, trusted);
     const claims = Object.keys(request.headers).filter((name) => CLAIM.test(name));
@@ -34,6 +38,13 @@ export function createWebServer({ handler, folder, origin, proxies = '' }) {
     compress(request, response, () => files(request, response, () => passOn(handler, request, response)));
   };
 
+  const hold = (response) => {
+    streams.add(response);
+    response.on('close', () => streams.delete(response));
+    // Asked for by a connection that was open when we were told to stop.
+    if (!server.listening) response.destroy();
+  };
+
   const server = createServer(
     { requestTimeout: 60_000, headersTimeout: 20_000, keepAliveTimeout: 65_000 },
     serve,
@@ -43,8 +54,16 @@ export function createWebServer({ handler, folder, origin, proxies = '' }) {
     if (!refusesLength(request)) response.writeContinue();
     serve(request, response);
   });
-  return server;
+  /** Takes no more requests, lets those in hand end, and cuts the streams: whoever reads them comes back elsewhere. */
+  const drain = (onDrained) => {
+    server.close(onDrained);
+    server.closeIdleConnections();
+    for (const response of streams) response.destroy();
+  };
+  return Object.assign(server, { drain });
 }
+
+const isStream = (response) => String(response.getHeader('content-type')).startsWith('text/event-stream');
 
 /** What a client or a proxy says about who asked for what, and how. */
 const CLAIM = /^(x-forwarded-.*|x-real-ip|forwarded)$/;

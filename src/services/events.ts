@@ -1,5 +1,6 @@
 import { sql } from 'drizzle-orm';
-import type { Tx } from '@/db/client';
+import { connection, type Tx } from '@/db/client';
+import { log } from '@/lib/log';
 
 /** What every web process hears when it is committed. Ids only: whoever is told reads the rest as themselves. */
 export type LiveEvent =
@@ -39,4 +40,22 @@ export async function publish(
 
 async function notify(tx: Pick<Tx, 'execute'>, published: Published): Promise<void> {
   await tx.execute(sql`select pg_notify(${CHANNEL}, ${JSON.stringify(published)})`);
+}
+
+/**
+ * Hears what is published, over one connection of this process's own that comes back by itself. Done when it hears for
+ * the first time. `onGap`: the connection was away, and what was published meanwhile is missed.
+ */
+export function hearEvents(onEvent: (published: Published) => void, onGap: () => void): Promise<void> {
+  return new Promise((resolve) => {
+    let heardBefore = false;
+    const onHearing = () => {
+      if (heardBefore) onGap();
+      heardBefore = true;
+      resolve();
+    };
+    connection()
+      .sql.listen(CHANNEL, (payload) => onEvent(JSON.parse(payload)), onHearing)
+      .catch((error: unknown) => log.error('events are not heard yet', { error })); // the driver goes on trying
+  });
 }

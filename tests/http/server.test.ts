@@ -14,6 +14,14 @@ writeFileSync(join(folder, 'mark.svg'), '<svg/>');
 async function echo(request: IncomingMessage & { body: AsyncIterable<Buffer> }, response: ServerResponse) {
   let length = 0;
   for await (const chunk of request.body) length += chunk.length;
+  if (request.url === '/stream') {
+    response.writeHead(200, {
+      'content-type': 'text/event-stream',
+      'cache-control': 'no-store, no-transform',
+    });
+    response.write('event: unread\ndata: {"unread":1}\n\n');
+    return;
+  }
   const text = JSON.stringify({ headers: request.headers, length });
   if (request.url === '/slow') await new Promise((resolve) => setTimeout(resolve, 300));
   response.writeHead(200, { 'content-type': request.url === '/page' ? 'text/html' : 'application/json' });
@@ -22,11 +30,12 @@ async function echo(request: IncomingMessage & { body: AsyncIterable<Buffer> }, 
 
 const start = (options: { origin: string; proxies?: string }) => {
   const server = createWebServer({ handler: echo, folder, ...options });
-  return new Promise<{ url: string; close: () => Promise<void> }>((resolve) => {
+  return new Promise<{ url: string; close: () => Promise<void>; drain: () => Promise<void> }>((resolve) => {
     server.listen(0, '127.0.0.1', () => {
       const { port } = server.address() as AddressInfo;
       const close = () => new Promise<void>((done) => server.close(() => done()));
-      resolve({ url: `http://127.0.0.1:${port}`, close });
+      const drain = () => new Promise<void>((done) => server.drain(() => done()));
+      resolve({ url: `http://127.0.0.1:${port}`, close, drain });
     });
   });
 };
@@ -129,5 +138,21 @@ describe('an answer', () => {
     const closed = server.close();
     expect((await slow).status).toBe(200);
     await closed;
+  });
+
+  test('that streams comes at once, and does not hold a server that is told to stop', async () => {
+    const server = await start({ origin: 'http://localhost:1' });
+    const stream = await fetch(`${server.url}/stream`, { headers: { 'accept-encoding': 'gzip' } });
+    expect(stream.headers.get('content-encoding')).toBeNull();
+    const reader = stream.body?.getReader();
+    expect(new TextDecoder().decode((await reader?.read())?.value)).toContain('"unread":1');
+    const slow = fetch(`${server.url}/slow`, { method: 'POST', body: 'x' });
+    await new Promise((resolve) => setTimeout(resolve, 100));
+    const began = performance.now();
+    const drained = server.drain();
+    await expect(reader?.read()).rejects.toThrow();
+    expect((await slow).status).toBe(200);
+    await drained;
+    expect(performance.now() - began).toBeLessThan(2000);
   });
 });

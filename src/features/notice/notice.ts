@@ -39,6 +39,20 @@ export const NoticeView = z.strictObject({
 });
 export type NoticeView = z.output<typeof NoticeView>;
 
+/** What to mark as read: these, all of one page, or all that were told up to a moment. */
+export const MarkRead = z.union([
+  z.strictObject({ ids: z.array(z.uuid()).min(1).max(200) }),
+  z.strictObject({ href: z.string().startsWith('/').max(2000) }),
+  z.strictObject({ until: z.iso.datetime() }),
+]);
+export type MarkRead = z.output<typeof MarkRead>;
+
+/** Where a list of notices goes on: unread before read, each newest first. */
+export const NoticePlace = z.tuple([z.boolean(), z.string(), z.uuid()]);
+export type NoticePlace = z.output<typeof NoticePlace>;
+
+export const UnreadCount = z.strictObject({ unread: z.int() });
+
 const DIGEST_HOUR = 6; // UTC
 
 /** The next hour at which digests go out. */

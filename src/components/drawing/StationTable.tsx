@@ -9,6 +9,7 @@ import type { StripInput } from './strip/strip-layout';
 type Props = Pick<StripInput, 'beam' | 'solution' | 'envelopes'> & {
   format: DrawingFormat;
   quantities?: readonly Quantity[] | undefined;
+  onToggle?: ((isOpen: boolean) => void) | undefined;
 };
 
 function columnsOf({ solution, envelopes, quantities = QUANTITIES }: Props): StationColumn[] {
@@ -49,7 +50,7 @@ export function StationTable(props: Props) {
   if (columns.length === 0) return null;
   const names = namedSupports(beam);
   return (
-    <details className="station-table">
+    <details className="station-table" onToggle={({ currentTarget }) => props.onToggle?.(currentTarget.open)}>
       <summary className="link">Show as table</summary>
       <table className="schedule">
         <caption>{`Stations are from ${origin(beam)}. Where a value jumps, left and right of the station are given.`}</caption>

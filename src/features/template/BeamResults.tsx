@@ -1,4 +1,4 @@
-import { type ComponentProps, memo, useMemo } from 'react';
+import { type ComponentProps, memo, useMemo, useState } from 'react';
 import { ElevationStrip, type ElevationStripProps } from '@/components/drawing/ElevationStrip';
 import { DRAWING_FORMATS } from '@/components/drawing/quantity-format';
 import { StationTable } from '@/components/drawing/StationTable';
@@ -63,10 +63,11 @@ export function BeamResults({
 
 const Table = memo(StationTable);
 
-/** Nobody reads a table while a value is dragged: it follows when the hand rests, and the frame is the drawing's. */
+/** Nobody reads a table that is folded away, or while a value is dragged: the frame is the drawing's. */
 function RestedTable({ beam, solution, envelopes, format }: ComponentProps<typeof StationTable>) {
+  const [isOpen, setOpen] = useState(false);
   const stated = useMemo(() => ({ beam, solution, envelopes, format }), [beam, solution, envelopes, format]);
-  return <Table {...useRestedValue(stated)} />;
+  return <Table {...useRestedValue(stated, isOpen ? undefined : null)} onToggle={setOpen} />;
 }
 
 const symbolsOf = ({ dimensions, loadNames }: Named) => ({

@@ -4,6 +4,11 @@ import { unitText } from '@/engine/quantity';
 import { WideFormula } from './WideFormula';
 import { isLong, type WorkedSteps } from './worked';
 
+/** Worked steps, and the formula of each, set. */
+export interface Worked extends Pick<WorkedSteps, 'steps'> {
+  readonly formulaOf: (index: number) => string;
+}
+
 const ROW =
   'grid grid-cols-[26px_minmax(0,1fr)_132px] items-center border-b py-8 max-md:grid-cols-[28px_minmax(0,1fr)]';
 const KEY_ROW = 'border-ink bg-ochre-wash pr-9 pl-9 shadow-[inset_3px_0_0_var(--color-ochre)]';
@@ -11,11 +16,11 @@ const FORMULA =
   'col-start-2 min-w-0 overflow-x-auto overflow-y-hidden py-1 max-md:col-span-2 max-md:col-start-1 [&_.base]:my-3';
 
 /** The worked steps, numbered; those that find the redundants are washed. */
-export function Derivation({ steps, formulas }: WorkedSteps) {
+export function Derivation({ steps, formulaOf }: Worked) {
   return (
     <ol className="mt-6 border-t-2 border-ink">
       {steps.map((step, index) => (
-        <Step key={step.id} steps={steps} index={index} html={formulas[index] ?? ''} />
+        <Step key={step.id} steps={steps} index={index} formulaOf={formulaOf} />
       ))}
     </ol>
   );
@@ -24,10 +29,10 @@ export function Derivation({ steps, formulas }: WorkedSteps) {
 interface StepProps {
   readonly steps: readonly DerivationStep[];
   readonly index: number;
-  readonly html: string;
+  readonly formulaOf: Worked['formulaOf'];
 }
 
-function Step({ steps, index, html }: StepProps) {
+function Step({ steps, index, formulaOf }: StepProps) {
   const step = steps[index];
   if (!step) return null;
   const { title, display, unit, note, key, charts = [] } = step;
@@ -38,7 +43,8 @@ function Step({ steps, index, html }: StepProps) {
         <RichHtml text={title} />
       </span>
       <WideFormula
-        html={html}
+        index={index}
+        formulaOf={formulaOf}
         title={title}
         className={`${FORMULA} ${isLong(step) ? 'col-span-2 [&_.katex]:text-[0.95em]!' : '[&_.katex]:text-[1.06em]!'}`}
       />

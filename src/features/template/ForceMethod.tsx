@@ -6,10 +6,10 @@ import { forceMethod, type Solution } from '@/engine/beam';
 import { type Beam, checkRedundants, type Redundant } from '@/engine/model';
 import type { UnitSystemName } from '@/engine/quantity';
 import type { Instance } from '@/engine/template';
-import { Derivation } from './Derivation';
+import { Derivation, type Worked } from './Derivation';
 import { RedundantChoice } from './RedundantChoice';
 import { type Release, releaseKey, toRedundant, toRelease } from './release';
-import { useLater, useNear } from './use-live';
+import { useLater, useNear, useRestedValue } from './use-live';
 import type { WorkedSteps } from './worked';
 
 /** A beam that was solved, with the letters of its template. */
@@ -35,6 +35,9 @@ interface ForceMethodProps {
   readonly letters?: readonly [string, string];
 }
 
+/** After the worked steps. */
+const PICTURES_MS = 60;
+
 const loadKit = () => import('./derivation-kit');
 
 /** The choice of redundant, and compatibility worked with it. */
@@ -51,15 +54,19 @@ export const ForceMethod = memo(function ForceMethod({
   const kit = useLater(loadKit, useNear(host));
   const { beam, solution } = solved;
   const redundants = useMemo(() => redundantsOf(solved, releases), [solved, releases]);
-  const pictures = useMemo(
-    () => forceMethodPictures(beam, forceMethod(beam, redundants), solution),
-    [beam, solution, redundants],
+  // The worked steps come first; the pictures follow them.
+  const pictured = useRestedValue(
+    useMemo(() => ({ beam, solution, redundants }), [beam, solution, redundants]),
+    PICTURES_MS,
   );
   const worked = useMemo(
     () => kit && work(kit, solved, redundants, system),
     [kit, solved, redundants, system],
   );
-  const shown = worked ?? initial;
+  const shown = worked ?? {
+    steps: initial.steps,
+    formulaOf: (index: number) => initial.formulas[index] ?? '',
+  };
   const chosen = releaseKey(redundants.flatMap((one) => toRelease(beam, one) ?? []));
   return (
     <div ref={host}>
@@ -69,20 +76,34 @@ export const ForceMethod = memo(function ForceMethod({
       >
         Redundant
       </ZoneHeading>
-      <RedundantChoice beam={beam} solution={solution} chosen={chosen} onChoose={onChoose} />
+      <Choice beam={pictured.beam} solution={pictured.solution} chosen={chosen} onChoose={onChoose} />
       <div className="mt-20">
         <ZoneHeading letter={letters[1]} note={note}>
           {beam.degree > 0 ? 'Compatibility, worked' : 'Worked'}
         </ZoneHeading>
-        {beam.degree > 0 && (
-          <PictureEquation
-            {...pictures}
-            label="The released beam under the loads, and each redundant times its unit case, add up to the member as built."
-          />
-        )}
-        <Derivation steps={shown.steps} formulas={shown.formulas} />
+        {beam.degree > 0 && <Equation {...pictured} />}
+        <Derivation steps={shown.steps} formulaOf={shown.formulaOf} />
       </div>
     </div>
+  );
+});
+
+const Choice = memo(RedundantChoice);
+
+interface EquationProps extends Pick<SolvedCase, 'beam' | 'solution'> {
+  readonly redundants: readonly Redundant[];
+}
+
+const Equation = memo(function Equation({ beam, solution, redundants }: EquationProps) {
+  const pictures = useMemo(
+    () => forceMethodPictures(beam, forceMethod(beam, redundants), solution),
+    [beam, solution, redundants],
+  );
+  return (
+    <PictureEquation
+      {...pictures}
+      label="The released beam under the loads, and each redundant times its unit case, add up to the member as built."
+    />
   );
 });
 
@@ -96,17 +117,25 @@ function redundantsOf({ beam, solution }: SolvedCase, releases: readonly Release
 
 type Kit = Awaited<ReturnType<typeof loadKit>>;
 
+/** The steps, and their formulas as they are asked for: what is out of sight need not be set at once. */
 function work(
   { derive, setStep }: Kit,
   { beam, instance }: SolvedCase,
   redundants: readonly Redundant[],
   system: UnitSystemName,
-): WorkedSteps {
+): Worked {
   const steps = derive({
     beam,
     redundants,
     names: { lengths: instance.dimensions, loads: instance.loadNames },
     system,
   });
-  return { steps, formulas: steps.map(setStep) };
+  const set = new Map<number, string>();
+  const formulaOf = (index: number): string => {
+    const step = steps[index];
+    const html = set.get(index) ?? (step ? setStep(step) : '');
+    set.set(index, html);
+    return html;
+  };
+  return { steps, formulaOf };
 }

@@ -139,6 +139,8 @@ interface LowerProps extends ZoneProps {
 function LowerZones({ data, page, action, axial }: LowerProps) {
   const { evaluation } = page.good;
   const rested = useRestedValue(evaluation);
+  // What is said beside the derivation follows it.
+  const after = useRestedValue(rested, 60);
   const note = page.outcome.ok ? undefined : 'At the last good values';
   return (
     <div className="grid flex-1 border-t border-ink md:grid-cols-[minmax(0,1fr)_var(--title-column)] lg:grid-cols-[minmax(0,724fr)_minmax(0,312fr)_var(--title-column)]">
@@ -152,7 +154,7 @@ function LowerZones({ data, page, action, axial }: LowerProps) {
           note={note}
         />
       </section>
-      <RulesAndForms data={data} rested={rested} note={note} axial={axial} />
+      <RulesAndForms data={data} rested={after} note={note} axial={axial} />
       <aside className="flex min-w-0 flex-col border-ink max-md:border-t md:border-l">
         <ProofAndNotes data={data} />
         <div className="mt-auto">

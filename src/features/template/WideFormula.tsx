@@ -1,16 +1,20 @@
-import { useLayoutEffect, useRef, useState } from 'react';
+import { useLayoutEffect, useMemo, useRef, useState } from 'react';
 import { Formula } from './Formula';
+import { useInSight } from './use-live';
 
 interface WideFormulaProps {
-  readonly html: string;
+  readonly index: number;
+  readonly formulaOf: (index: number) => string;
   /** What the formula works out, in words. */
   readonly title: string;
   readonly className: string;
 }
 
 /** A formula that may be wider than its place: then it can have the focus, so that the arrow keys move it sideways. */
-export function WideFormula({ html, title, className }: WideFormulaProps) {
+export function WideFormula({ index, formulaOf, title, className }: WideFormulaProps) {
   const place = useRef<HTMLDivElement>(null);
+  const shown = useInSight(place, formulaOf);
+  const html = useMemo(() => shown(index), [shown, index]);
   const [isWide, setWide] = useState(false);
   useLayoutEffect(() => {
     const { current } = place;

@@ -25,15 +25,17 @@ export type Calculation = Frame & {
   symbols?: string;
   /** Where it is known better than the expression gives it. */
   value?: number;
+  /** What it is nothing beside: results of its kind, SI. */
+  beside?: number;
   /** Written in the order it has, as a rule of solution reads; else what is positive comes first. */
   isRule?: true;
 };
 
 export function calculate(letters: Letters, calculation: Calculation): DerivationStep {
-  const { symbols, value, isRule } = calculation;
+  const { symbols, value, isRule, beside } = calculation;
   const given = isRule ? calculation.expression : oriented(calculation.expression, letters.value);
   const expression = add(given);
-  const { unit, shown, numbers, result } = arithmetic(letters, calculation, expression, value);
+  const { unit, shown, numbers, result } = arithmetic(letters, calculation, expression, value, beside);
   const { id, title, left, extra } = calculation;
   const tex = (terms: Expression) => texOf(terms, letters.symbols());
   const right =
@@ -50,21 +52,23 @@ export function calculate(letters: Letters, calculation: Calculation): Derivatio
   };
 }
 
-/** An expression's numbers, and what they come to. */
+/** An expression's numbers, and what they come to. Terms that are nothing are left out of them. */
 export function arithmetic(
   letters: Letters,
   { kind, scale }: Pick<Frame, 'kind' | 'scale'>,
   expression: Expression,
   value = letters.of(expression),
+  beside = 0,
 ) {
+  const counting = expression.filter((term) => letters.of([term]) !== 0);
   return written(
     letters,
     { kind, scale },
     {
       value,
-      largest: letters.largest(expression),
-      total: (figures) => evaluate(expression, (tex) => letters.shown(tex, scale, figures)),
-      tex: (figures) => (expression.length === 0 ? '' : texOf(expression, letters.numbers(scale, figures))),
+      largest: Math.max(letters.largest(expression), beside),
+      total: (figures) => evaluate(counting, (tex) => letters.shown(tex, scale, figures)),
+      tex: (figures) => (counting.length === 0 ? '' : texOf(counting, letters.numbers(scale, figures))),
     },
   );
 }

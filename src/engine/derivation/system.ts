@@ -4,7 +4,7 @@ import { arithmetic, calculate, fewest } from './step';
 import { type Letters, numberTex } from './symbols';
 import type { DerivationStep } from './types';
 import { inUnit, type Kind, toSi, unitTex } from './units';
-import { acts, type Unknown } from './unknown';
+import { acts, flexibilityTex, type Unknown } from './unknown';
 import { nameForce, negativeNote } from './words';
 
 /** Equations Σ c_ij X_j = d_i for the redundants, in letters. */
@@ -20,12 +20,13 @@ export type System = {
 };
 
 /** How an unknown comes out of a step. */
-const found = ({ values }: System, unknown: Unknown, i: number) => ({
+const found = ({ values, unknowns }: System, unknown: Unknown, i: number) => ({
   id: `redundant-${unknown.key}`,
   left: unknown.tex,
   kind: acts(unknown),
   scale: 'handed' as const,
   value: values[i]!,
+  beside: Math.max(...values.filter((_, j) => acts(unknowns[j]!) === acts(unknown)).map(Math.abs)),
   extra: {
     key: true as const,
     figure: { structure: 'built' as const },
@@ -103,7 +104,7 @@ function eliminate(system: System, k: number): { step: DerivationStep | null; re
       const kind = coefficientKind(letters, system, i, j);
       coefficients[i]![j] = newLetter(
         letters,
-        system.coefficients[i]![j] ?? `f_{${unknowns[i]!.index}${unknowns[j]!.index}}`,
+        system.coefficients[i]![j] ?? flexibilityTex(unknowns[i]!, unknowns[j]!),
         value,
         kind,
         lines,

@@ -150,7 +150,14 @@ function equations(
   spans: readonly Span[],
   loads: readonly (readonly [LoadTerm, LoadTerm])[],
 ): DerivationStep[] {
-  const rows = worked.unknowns.map((_, k) => rowOf(worked, spans, loads, k));
+  const rows = worked.unknowns.map(({ x }) =>
+    rowOf(
+      worked,
+      spans,
+      loads,
+      spans.findIndex(({ right }) => right.x === x),
+    ),
+  );
   return worked.unknowns.length === 1 ? one(worked, rows[0]!) : several(worked, rows);
 }
 

@@ -5,6 +5,7 @@ import { verifyChain } from '@/features/audit/audit.server';
 import { findRevision } from '@/features/review/library.server';
 import { createDraft, takeStep } from '@/features/review/review.server';
 import { ask } from '../support/app';
+import { proveRevision } from '../support/library';
 import { foundPractice } from '../support/practice';
 import { foundStockedPractice } from '../support/stocked';
 
@@ -266,6 +267,7 @@ test('a member keeps its pins when newer revisions are issued, and says so', asy
     }),
   );
   await takeStep(librarian, draft.revisionId, { step: 'submit' });
+  await proveRevision(checker, draft.revisionId);
   await takeStep(checker, draft.revisionId, { step: 'issue' });
 
   const { json } = await ask('GET', at('P1'), { token });

@@ -1,4 +1,5 @@
 import { and, eq } from 'drizzle-orm';
+import { recordProof } from '@/features/review/proof-run.server';
 import type { DocumentKind, RevisionState } from '@/features/review/review';
 import { createDraft, type Draft, takeStep } from '@/features/review/review.server';
 import type { Tx } from '../client';
@@ -8,11 +9,26 @@ import type { DemoPeople, DemoPerson } from './people';
 
 export type Shipped = Omit<Draft, 'changeNote' | 'changeClass' | 'consequence'>;
 
+/** The outcome of a document's proof. */
+export interface Proof {
+  readonly passed: boolean;
+  readonly report: unknown;
+}
+
+interface Making {
+  /** Writes what belongs to the draft besides its body. */
+  readonly fill?: (tx: Tx, practiceId: string, revisionId: string) => Promise<void>;
+  /** Proves what computes, without which it is not issued. */
+  readonly prove?: () => Proof;
+}
+
 const FIRST_ISSUE = {
   changeNote: 'First issue.',
   changeClass: 'improvement',
   consequence: 'safety',
 } as const;
+
+const QUIETLY = { quietly: true };
 
 /** The librarian, who writes the demo's first issues, and the checker, who reviews them. */
 const AUTHOR = 'Priyanka Velloor';
@@ -46,11 +62,11 @@ const isFirst = and(
   eq(revision.number, 1),
 );
 
-/** Takes a shipped document through all its steps. `fill` writes what belongs to the draft besides its body. */
+/** Takes a shipped document through all its steps. */
 export async function issueShipped(
   people: DemoPeople,
   shipped: Shipped,
-  fill: (tx: Tx, practiceId: string, revisionId: string) => Promise<void> = async () => undefined,
+  { fill, prove }: Making = {},
 ): Promise<void> {
   const author = personOf(people, AUTHOR);
   const { id, state } = await withPractice(author, async (tx) => {
@@ -67,11 +83,13 @@ export async function issueShipped(
       );
     if (found) return found;
     const { revisionId } = await createDraft(tx, author, { ...shipped, ...FIRST_ISSUE });
-    await fill(tx, author.practiceId, revisionId);
+    await fill?.(tx, author.practiceId, revisionId);
     return { id: revisionId, state: 'draft' as const };
   });
-  if (state === 'draft') await takeStep(author, id, { step: 'submit' });
-  await takeStep(personOf(people, REVIEWER), id, { step: 'issue' });
+  if (state === 'draft') await takeStep(author, id, { step: 'submit' }, QUIETLY);
+  const reviewer = personOf(people, REVIEWER);
+  if (prove) await withPractice(reviewer, (tx) => recordProof(tx, reviewer, id, prove()));
+  await takeStep(reviewer, id, { step: 'issue' }, QUIETLY);
 }
 
 function personOf(people: DemoPeople, name: string): DemoPerson {

@@ -16,7 +16,10 @@ export async function seedSections(people: DemoPeople): Promise<void> {
     await issueShipped(
       people,
       { kind: 'section-table', slug, reference, name, body, schemaVersion: 1 },
-      (tx, practiceId, revisionId) => fillEdition(tx, { practiceId, revisionId, table: slug }, reading.rows),
+      {
+        fill: (tx, practiceId, revisionId) =>
+          fillEdition(tx, { practiceId, revisionId, table: slug }, reading.rows),
+      },
     );
   }
 }

@@ -1,5 +1,6 @@
+import { runProofCases, type Template } from '@/engine/template';
 import { readShippedJson, shippedSlugs } from './files';
-import { issueShipped, missingFrom } from './library';
+import { issueShipped, missingFrom, type Proof } from './library';
 import type { DemoPeople } from './people';
 
 /** The templates of data/templates, their expressions parsed once into the trees that are stored. */
@@ -12,13 +13,16 @@ export async function seedTemplates(people: DemoPeople): Promise<void> {
     const reading = authorTemplate(await readShippedJson('templates', slug));
     if (!reading.ok) throw new Error(`data/templates/${slug}.json: ${JSON.stringify(reading.faults)}`);
     const { reference, name, schema_version: schemaVersion } = reading.template;
-    await issueShipped(people, {
-      kind: 'template',
-      slug,
-      reference,
-      name,
-      body: reading.template,
-      schemaVersion,
-    });
+    await issueShipped(
+      people,
+      { kind: 'template', slug, reference, name, body: reading.template, schemaVersion },
+      { prove: () => prove(reading.template) },
+    );
   }
+}
+
+/** By the proof cases alone: what is shipped was swept by the tests. */
+function prove(template: Template): Proof {
+  const cases = runProofCases(template);
+  return { passed: cases.every(({ ok }) => ok), report: { cases } };
 }

@@ -72,13 +72,16 @@ const select = (tx: Tx, practiceId: string, where: SQL | undefined) =>
 /** What stands for a document when none of its revisions is asked for: the issued one, else the newest. */
 const IS_ISSUED_FIRST = [desc(sql`${revision.state} = 'issued'`), desc(revision.number)];
 
+/** A draft that has faults is for its author's eyes; one that was laid aside is for nobody's. */
+const IS_WHOLE = sql`not jsonb_exists(${revision.body}, 'unfinished') and ${revision.abandonedAt} is null`;
+
 /** Every document of a kind by the revision that stands for it, in the order of their references. */
 export async function currentRevisions(
   tx: Tx,
   practiceId: string,
   kind: DocumentKind,
 ): Promise<LibraryRevision[]> {
-  const rows = await select(tx, practiceId, eq(document.kind, kind)).orderBy(
+  const rows = await select(tx, practiceId, and(eq(document.kind, kind), IS_WHOLE)).orderBy(
     asc(document.reference),
     ...IS_ISSUED_FIRST,
   );
@@ -98,7 +101,7 @@ export async function findRevision(
     and(
       eq(document.kind, key.kind),
       eq(document.slug, key.slug),
-      key.number === undefined ? undefined : eq(revision.number, key.number),
+      key.number === undefined ? IS_WHOLE : eq(revision.number, key.number),
     ),
   )
     .orderBy(...IS_ISSUED_FIRST)

@@ -67,7 +67,11 @@ describe('a revision', () => {
   test('returned to its author is a draft again', async () => {
     const { revisionId } = await draftOf(librarian, 'returned');
     await takeStep(librarian, revisionId, { step: 'submit' });
-    await takeStep(checker, revisionId, { step: 'return' });
+    await takeStep(checker, revisionId, {
+      step: 'return',
+      comment: 'The sign of the tip term.',
+      pointer: '',
+    });
     expect(await read(revisionId)).toMatchObject({ state: 'draft', submittedAt: null, reviewerId: null });
   });
 
@@ -99,7 +103,11 @@ describe('a step is refused', () => {
     const { revisionId } = await draftOf(author, 'own-work');
     await takeStep(author, revisionId, { step: 'submit' });
     expect(await refusedWith(takeStep(author, revisionId, { step: 'issue' }))).toBe('forbidden');
-    expect(await refusedWith(takeStep(author, revisionId, { step: 'return' }))).toBe('forbidden');
+    expect(
+      await refusedWith(
+        takeStep(author, revisionId, { step: 'return', comment: 'The sign of the tip term.', pointer: '' }),
+      ),
+    ).toBe('forbidden');
   });
 
   test('to a person without the role', async () => {

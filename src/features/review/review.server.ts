@@ -1,21 +1,28 @@
 import { and, eq, inArray, max, sql } from 'drizzle-orm';
 import type { Tx } from '@/db/client';
 import { document, revision } from '@/db/schema/library';
-import { type Tenant, withPractice } from '@/db/tenancy';
+import { withPractice } from '@/db/tenancy';
 import { ENGINE_VERSION } from '@/engine/version';
-import { type Person, requirePermission } from '@/features/account/permission';
+import { requirePermission } from '@/features/account/permission';
 import { recordAudit } from '@/features/audit/audit.server';
-import { AppError, invalid, notFound } from '@/lib/app-error';
+import { AppError, type Fault, invalid } from '@/lib/app-error';
 import { fingerprint } from '@/lib/fingerprint';
+import { announce } from './announce.server';
+import { insertComment, openComments } from './comment.server';
+import type { RevisionKey } from './draft';
+import { unfinishedOf } from './draft';
+import { isProven, requireProof } from './proof-run.server';
+import { openRecall } from './recall.server';
+import { isReferenceTaken, nameIn, referenceIn, referenceTaken } from './reference.server';
 import {
   type ChangeClass,
   type Consequence,
   type DocumentKind,
   REVISION_STEPS,
   type RevisionState,
+  stateName,
 } from './review';
-
-type Actor = Person & Tenant & { readonly personId: string };
+import { type Actor, type RevisionRow, requireRevision, requireRevisionById } from './rows.server';
 
 export interface Draft {
   readonly kind: DocumentKind;
@@ -26,8 +33,9 @@ export interface Draft {
   readonly body: unknown;
   readonly schemaVersion: number;
   readonly changeNote: string;
-  readonly changeClass: ChangeClass;
-  readonly consequence: Consequence;
+  /** Null while the draft does not say. */
+  readonly changeClass: ChangeClass | null;
+  readonly consequence: Consequence | null;
 }
 
 export interface DraftKey {
@@ -77,57 +85,100 @@ export async function createDraft(tx: Tx, author: Actor, draft: Draft): Promise<
 }
 
 export type StepRequest =
-  | { readonly step: 'submit' | 'return' | 'issue' }
+  | { readonly step: 'submit' | 'issue' }
+  | { readonly step: 'return'; readonly comment: string; readonly pointer: string }
   | { readonly step: 'withdraw'; readonly reason: string; readonly severity: Consequence };
 
-interface Moved {
+export interface Moved {
   readonly id: string;
   readonly documentId: string;
   readonly number: number;
   readonly state: RevisionState;
+  /** The case that a withdrawal opened; null where nothing used the revision. */
+  readonly recallId: string | null;
+}
+
+/** Nobody is told of a library that a practice starts with. */
+interface Manner {
+  readonly quietly?: boolean;
 }
 
 /** Takes one step of REVISION_STEPS. Of two people at once, one takes it and the other is told that it was taken. */
-export function takeStep(actor: Actor, revisionId: string, request: StepRequest): Promise<Moved> {
-  const { practiceId } = actor;
-  return withPractice(actor, async (tx) => {
-    const [current] = await tx
-      .select()
-      .from(revision)
-      .where(and(eq(revision.practiceId, practiceId), eq(revision.id, revisionId)));
-    if (!current) throw notFound('This revision');
-    const { from, to, action, done } = REVISION_STEPS[request.step];
-    requirePermission(actor, action, current);
-    refuseIncomplete(request, current);
-    if (request.step === 'issue') await supersedeIssued(tx, actor, current.documentId);
-    const [moved] = await tx
-      .update(revision)
-      .set({ state: to, ...traces(request, actor) })
-      .where(
-        and(
-          eq(revision.practiceId, practiceId),
-          eq(revision.id, revisionId),
-          inArray(revision.state, [...from]),
-        ),
-      )
-      .returning(MOVED);
-    if (!moved)
-      throw new AppError(
-        'illegal_step',
-        `Revision ${current.number} cannot be ${done}: it is not ${from.map(stateName).join(' or ')} any more. Read it again.`,
-      );
-    await recordAudit(tx, actor, {
-      action: `revision.${request.step}`,
-      subjectKind: 'revision',
-      subjectId: revisionId,
-      before: { state: current.state },
-      after:
-        request.step === 'withdraw'
-          ? { state: to, reason: request.reason, severity: request.severity }
-          : { state: to },
-    });
-    return moved;
+export const takeStep = (
+  actor: Actor,
+  revisionId: string,
+  request: StepRequest,
+  manner: Manner = {},
+): Promise<Moved> =>
+  withPractice(actor, async (tx) =>
+    step(tx, actor, await requireRevisionById(tx, actor.practiceId, revisionId), request, manner),
+  );
+
+/** The same for a revision by its address. */
+export const takeStepAt = (actor: Actor, key: RevisionKey, request: StepRequest): Promise<Moved> =>
+  withPractice(actor, async (tx) =>
+    step(tx, actor, await requireRevision(tx, actor.practiceId, key), request),
+  );
+
+async function step(
+  tx: Tx,
+  actor: Actor,
+  current: RevisionRow,
+  request: StepRequest,
+  { quietly = false }: Manner = {},
+): Promise<Moved> {
+  const { to, action } = REVISION_STEPS[request.step];
+  requirePermission(actor, action, current);
+  if (!isFrom(request.step, current.state)) throw wrongState(request, current);
+  await refuseUnready(tx, current, request);
+  if (request.step === 'issue') await supersedeIssued(tx, actor, current.documentId);
+  const moved = await move(tx, actor, current, request);
+  const effect = await followUp(tx, actor, current, request);
+  if (!quietly) await announce(tx, actor, current, request, effect.dedupe);
+  await recordAudit(tx, actor, {
+    action: `revision.${request.step}`,
+    subjectKind: 'revision',
+    subjectId: current.id,
+    before: { state: current.state },
+    after: {
+      state: to,
+      sha256: current.sha256,
+      ...said(request),
+      ...(effect.recallId && { recall: effect.recallId }),
+    },
   });
+  return { ...moved, recallId: effect.recallId };
+}
+
+const isFrom = (name: StepRequest['step'], state: RevisionState): boolean =>
+  REVISION_STEPS[name].from.some((one) => one === state);
+
+const wrongState = ({ step: name }: StepRequest, { number }: RevisionRow): AppError => {
+  const { from, done } = REVISION_STEPS[name];
+  return new AppError(
+    'illegal_step',
+    `Revision ${number} cannot be ${done}: it is not ${from.map(stateName).join(' or ')} any more. Read it again.`,
+  );
+};
+
+/** The expected state stands in the WHERE: somebody else may have taken a step since it was read. */
+async function move(tx: Tx, actor: Actor, current: RevisionRow, request: StepRequest) {
+  const { from, to } = REVISION_STEPS[request.step];
+  const [moved] = await tx
+    .update(revision)
+    .set({ state: to, ...traces(request, actor) })
+    .where(
+      and(
+        eq(revision.practiceId, actor.practiceId),
+        eq(revision.id, current.id),
+        inArray(revision.state, [...from]),
+        // What is sent to review is what was read: a save in between is somebody's work.
+        eq(revision.version, current.version),
+      ),
+    )
+    .returning(MOVED);
+  if (!moved) throw wrongState(request, current);
+  return moved;
 }
 
 const MOVED = {
@@ -137,25 +188,78 @@ const MOVED = {
   state: revision.state,
 };
 
-const stateName = (state: RevisionState): string => (state === 'draft' ? 'a draft' : state.replace('_', ' '));
+/** What the record keeps of a step besides the state. */
+function said(request: StepRequest): object {
+  switch (request.step) {
+    case 'return':
+      return { comment: request.comment };
+    case 'withdraw':
+      return { reason: request.reason, severity: request.severity };
+    default:
+      return {};
+  }
+}
 
-function refuseIncomplete(request: StepRequest, { changeNote }: { readonly changeNote: string }): void {
-  if (request.step === 'submit' && changeNote.trim() === '')
-    throw invalid([
-      {
-        pointer: '/change_note',
-        code: 'required',
-        message: 'Say in the change note what is new in this revision and why.',
-      },
-    ]);
+async function refuseUnready(tx: Tx, current: RevisionRow, request: StepRequest): Promise<void> {
   if (request.step === 'withdraw' && request.reason.trim() === '')
     throw invalid([
-      {
-        pointer: '/reason',
-        code: 'required',
-        message: 'Say what is wrong, for the people whose members use this revision.',
-      },
+      required('/reason', 'Say what is wrong, for the people whose members use this revision.'),
     ]);
+  if (request.step === 'return' && request.comment.trim() === '')
+    throw invalid([required('/comment', 'Say what has to change, for its author.')]);
+  if (request.step === 'submit') {
+    const faults = [...unclassed(current), ...(await documentFaults(tx, current))];
+    if (faults.length > 0) throw invalid(faults);
+  }
+  if (request.step === 'issue') await refuseUnproven(tx, current);
+}
+
+const required = (pointer: string, message: string): Fault => ({ pointer, code: 'required', message });
+
+function unclassed({ changeNote, changeClass, consequence }: RevisionRow): Fault[] {
+  return [
+    ...(changeNote.trim() === ''
+      ? [required('/change_note', 'Say in the change note what is new in this revision and why.')]
+      : []),
+    ...(changeClass === null
+      ? [
+          required(
+            '/change_class',
+            'Say what kind of change it is: error, code edition, improvement or wording.',
+          ),
+        ]
+      : []),
+    ...(consequence === null
+      ? [required('/consequence', 'Say what is at stake: safety, service or cosmetic.')]
+      : []),
+  ];
+}
+
+/** Faults of the draft's document, each with its place in the draft. */
+async function documentFaults(tx: Tx, current: RevisionRow): Promise<Fault[]> {
+  const reference = referenceIn(Object(current.body));
+  const isTaken =
+    reference !== null && (await isReferenceTaken(tx, current.practiceId, reference, current.of));
+  const faults = unfinishedOf(current.body) ? await faultsOf(tx, current) : [];
+  const all = isTaken && faults.length === 0 ? [referenceTaken(reference)] : faults;
+  return all.map((fault) => ({ ...fault, pointer: `/document${fault.pointer}` }));
+}
+
+/** Loaded when it is needed: it brings the expression parser, which a start of the demo does without. */
+async function faultsOf(tx: Tx, current: RevisionRow): Promise<Fault[]> {
+  const { faultsOfDraft } = await import('./draft.server');
+  return faultsOfDraft(tx, current);
+}
+
+async function refuseUnproven(tx: Tx, current: RevisionRow): Promise<void> {
+  const { practiceId, id, sha256, of } = current;
+  const open = await openComments(tx, practiceId, id);
+  if (open > 0)
+    throw new AppError(
+      'conflict',
+      `${open === 1 ? 'One comment is' : `${open} comments are`} not resolved. Whoever raised ${open === 1 ? 'it' : 'them'} resolves ${open === 1 ? 'it' : 'them'} before the issue.`,
+    );
+  if (isProven(of.kind)) await requireProof(tx, practiceId, { revisionId: id, sha256 });
 }
 
 /** What a step leaves in the row besides the new state. */
@@ -176,6 +280,48 @@ function traces(request: StepRequest, actor: Actor) {
         withdrawalSeverity: request.severity,
       };
   }
+}
+
+/** What follows from a step in the same transaction. `dedupe` names the step among those of its kind. */
+async function followUp(
+  tx: Tx,
+  actor: Actor,
+  current: RevisionRow,
+  request: StepRequest,
+): Promise<{ recallId: string | null; dedupe: string }> {
+  switch (request.step) {
+    case 'submit':
+      return { recallId: null, dedupe: new Date().toISOString() };
+    case 'return': {
+      const { comment: body, pointer } = request;
+      return {
+        recallId: null,
+        dedupe: await insertComment(tx, actor, current, { body, pointer, parentId: null }),
+      };
+    }
+    case 'issue':
+      await nameAsIssued(tx, current);
+      return { recallId: null, dedupe: '' };
+    case 'withdraw':
+      return { recallId: await openRecall(tx, actor, current, request), dedupe: '' };
+  }
+}
+
+/** A document is called as its issued revision says. */
+async function nameAsIssued(tx: Tx, { practiceId, of, body }: RevisionRow): Promise<void> {
+  const given = Object(body);
+  const reference = referenceIn(given) ?? of.reference;
+  const name = 'name' in given ? nameIn(given, of) : of.name;
+  if (reference === of.reference && name === of.name) return;
+  if (await isReferenceTaken(tx, practiceId, reference, of))
+    throw new AppError(
+      'conflict',
+      `The reference ${reference} belongs to another document by now. Return the revision.`,
+    );
+  await tx
+    .update(document)
+    .set({ name, reference })
+    .where(and(eq(document.practiceId, practiceId), eq(document.id, of.id)));
 }
 
 /** Makes room for the revision that is being issued. The document is locked: of two issues at once, one waits. */

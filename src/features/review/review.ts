@@ -77,6 +77,10 @@ export function stepsFor(
   });
 }
 
+/** In a sentence: "it is not a draft any more". */
+export const stateName = (state: RevisionState): string =>
+  state === 'draft' ? 'a draft' : state.replace('_', ' ');
+
 /** Of what a worker does for a revision: its proof, its impact. */
 export const RUN_STATES = ['queued', 'running', 'finished', 'failed'] as const;
 export type RunState = (typeof RUN_STATES)[number];

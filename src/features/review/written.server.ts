@@ -27,8 +27,12 @@ function bySchema(schema: z.ZodType<object>, document: Written): DocumentReading
   return reading.ok ? { ok: true, body: reading.value } : reading;
 }
 
+/** HTML or a script in a document's notes. */
+export const scriptFaults = (kind: DocumentKind, document: Written): Fault[] =>
+  kind === 'template' ? noteFaults(notesOf(document)) : [];
+
 function readTemplate(document: Written): DocumentReading {
-  const notes = noteFaults(notesOf(document));
+  const notes = scriptFaults('template', document);
   const reading = read(writtenTemplate, document);
   const faults = reading.ok
     ? [...notes, ...meaningFaults(reading.value)]

@@ -3,6 +3,7 @@ import { type Tenant, withPractice } from '@/db/tenancy';
 import { type ProofResult, runProofCases, type Template } from '@/engine/template';
 import { templateDocument } from '@/engine/template/document';
 import { type Person, requirePermission } from '@/features/account/permission';
+import { unfinishedOf } from '@/features/review/draft';
 import {
   currentRevisions,
   findRevision,
@@ -13,7 +14,7 @@ import {
 } from '@/features/review/library.server';
 import { chooseMaterial, chooseSection } from '@/features/section/choose.server';
 import { resolveSection } from '@/features/section/resolve';
-import { invalid, notFound } from '@/lib/app-error';
+import { AppError, invalid, notFound } from '@/lib/app-error';
 import { toEvaluateAnswer } from './answer';
 import { evaluateTemplate, type SectionOfTemplate } from './evaluate';
 import { type CatalogueQuery, createFinder, narrow, type Searchable } from './find';
@@ -139,6 +140,11 @@ export function readTemplate(actor: Actor, key: TemplateKey): Promise<TemplateRe
 async function revisionOf(tx: Tx, practiceId: string, { slug, number }: TemplateKey) {
   const found = await findRevision(tx, practiceId, { kind: 'template', slug, number });
   if (!found) throw notFound(number === undefined ? 'This template' : 'This revision of the template');
+  if (unfinishedOf(found.body))
+    throw new AppError(
+      'conflict',
+      `Revision ${found.number} is a draft that has faults still. Open the draft.`,
+    );
   return found;
 }
 

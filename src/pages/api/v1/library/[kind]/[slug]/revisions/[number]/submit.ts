@@ -1,0 +1,12 @@
+import { endpoint } from '@/http/endpoint';
+import { StepView, takeStepHere } from '@/http/library';
+
+export const POST = endpoint(
+  {
+    summary: 'Send a draft to review',
+    description:
+      'Refused while the draft has faults, or does not say what changes, of which class and with what consequence.',
+    answer: StepView,
+  },
+  ({ params }, { user }) => takeStepHere(params, user, { step: 'submit' }),
+);

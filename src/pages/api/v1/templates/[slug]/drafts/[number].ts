@@ -1,0 +1,1 @@
+export { DELETE, GET, PUT } from '../../../library/[kind]/[slug]/drafts/[number]';

@@ -1,0 +1,1 @@
+export { POST } from '../../../../library/[kind]/[slug]/revisions/[number]/issue';

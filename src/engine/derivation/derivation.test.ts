@@ -1,29 +1,11 @@
-import katex from 'katex';
 import { describe, expect, test } from 'vitest';
-import { type Beam, type BeamDocument, type Redundant, readBeam } from '../model/index';
-import { type DerivationStep, derive } from './index';
-
-function read(document: BeamDocument): Beam {
-  const reading = readBeam({ horizontal: 'ignore', ...document });
-  if (!reading.ok) throw new Error(JSON.stringify(reading.faults));
-  return reading.value;
-}
-
-/** Steps by id; every TeX string of them parses in KaTeX's strict mode. */
-function stepsOf(input: Parameters<typeof derive>[0]): Record<string, DerivationStep> {
-  const steps = derive(input);
-  for (const { symbols, numbers } of steps) {
-    for (const tex of [symbols, numbers]) katex.renderToString(tex, { throwOnError: true, strict: 'error' });
-  }
-  return Object.fromEntries(steps.map((step) => [step.id, step]));
-}
-
-const line = (from: number, to: number, w0: number, w1 = w0) => ({ kind: 'line' as const, from, to, w0, w1 });
+import { beamOf, line, stepsOf } from '../../../tests/support/derivation-steps';
+import type { BeamDocument, Redundant } from '../model/index';
 
 /** The benchmark: L 6.0 m, a 1.8 m, w 5.517 kN/m, P 6.0 kN at the tip, EI 9963 kNm². */
 const [L, a, w, P] = [6, 1.8, 5517, 6000];
 const overhang = (...loads: NonNullable<BeamDocument['loads']>) =>
-  read({
+  beamOf({
     length: L + a,
     ei: 9.963e6,
     supports: [
@@ -38,6 +20,7 @@ const lengths = [
 ];
 const prop: Redundant = { support: 1, component: 'vertical' };
 const wall: Redundant = { support: 0, component: 'rotation' };
+const root: Redundant = { support: 0, component: 'vertical' };
 
 describe('propped cantilever with overhang, uniform load on all, prop removed', () => {
   const steps = stepsOf({
@@ -48,7 +31,7 @@ describe('propped cantilever with overhang, uniform load on all, prop removed', 
 
   test('reads as the textbook does', () => {
     expect(steps['gap-B']).toMatchObject({
-      title: 'Deflection at B of the cantilever, prop removed',
+      title: 'Deflection at B of the cantilever, support B removed',
       symbols: '\\delta_{B0}=\\dfrac{wL^4}{8EI}+\\dfrac{waL^3}{3EI}+\\dfrac{wa^2L^2}{4EI}',
       unit: 'mm',
       figure: { structure: 'released' },
@@ -62,7 +45,7 @@ describe('propped cantilever with overhang, uniform load on all, prop removed', 
       figure: { structure: 'unit', redundant: 0 },
     });
     expect(steps['compatibility']).toMatchObject({
-      title: 'The prop holds B where it was: the two must cancel',
+      title: 'The support holds B where it was: the two must cancel',
       symbols: '\\delta_{B0}-R_{B}f_{BB}=0\\quad\\Rightarrow\\quad R_{B}=\\dfrac{\\delta_{B0}}{f_{BB}}',
       key: true,
       unit: 'kN',
@@ -77,9 +60,22 @@ describe('propped cantilever with overhang, uniform load on all, prop removed', 
       symbols: 'M_{A}=\\dfrac{w\\,(L+a)^2}{2}-R_{B}L',
     });
     expect(steps['moment-B']?.symbols).toBe('M_{B}=-\\dfrac{wa^2}{2}');
+    expect(steps['zero-shear']?.symbols).toBe('x_m=L+a-\\dfrac{R_{B}}{w}');
     expect(steps['check']).toMatchObject({
-      title: 'Check: slope at A from the other redundant',
-      display: '0.000',
+      title: 'Check: deflection at A from the other redundant',
+      note: 'At A the support does not move, and neither does the beam.',
+    });
+    expect(Number(steps['check']?.display)).toBe(0);
+  });
+
+  test('says what is released, in which sense, and that what is left stands', () => {
+    expect(steps['count']?.note).toContain(
+      'Any one may be released: the reaction at A, the fixing moment at A or the reaction at B.',
+    );
+    expect(steps['released']).toMatchObject({
+      title: 'Released: the reaction at B. What is left is a cantilever fixed at A',
+      symbols: 'R_{B}\\ (\\uparrow)',
+      note: expect.stringContaining('the choice is admissible'),
     });
   });
 
@@ -89,13 +85,17 @@ describe('propped cantilever with overhang, uniform load on all, prop removed', 
       'cantilever-point',
       'cantilever-couple',
     ]);
-    expect(steps['gap-B']?.charts?.[0]?.source).toContain('from memory');
+    expect(steps['gap-B']?.charts?.[0]?.source).toBe(
+      'Steel Construction Manual (AISC), 15th edition, table 3-23, case 19, from memory',
+    );
   });
 
   test('goes from count to check in the order of the method', () => {
-    expect(Object.keys(steps)).toEqual([
+    const order = Object.keys(steps).filter((id) => !id.startsWith('deflection'));
+    expect(order).toEqual([
       'given',
       'count',
+      'released',
       'gap-B',
       'flexibility-B-B',
       'compatibility',
@@ -103,6 +103,7 @@ describe('propped cantilever with overhang, uniform load on all, prop removed', 
       'equilibrium-RA',
       'equilibrium-MA',
       'moment-B',
+      'zero-shear',
       'largest-moment',
       'check',
     ]);
@@ -113,15 +114,30 @@ describe('propped cantilever with overhang, uniform load on all, prop removed', 
     expect(Math.abs(steps['compatibility']!.value! / want - 1)).toBeLessThan(1e-13);
     expect(Math.abs(steps['closed-form']!.value! / want - 1)).toBeLessThan(1e-13);
   });
+
+  // wa(6a³ + 6a²L − L³)/48EI, of the design's template catalogue.
+  test('ends with the deflection of the tip, from the span with its end moments', () => {
+    const want = (w * a * (6 * a ** 3 + 6 * a ** 2 * L - L ** 3)) / (48 * 9.963e6);
+    expect(steps['deflection-7.800']?.title).toBe(
+      'Deflection at the right end: A–B as a simple span under its loads and the moment at its end: together',
+    );
+    expect(Math.abs(steps['deflection-7.800']!.value! / want - 1)).toBeLessThan(1e-12);
+  });
 });
 
 describe('the force-method benchmark', () => {
   const beam = overhang(line(0, L + a, w), { kind: 'point', at: L + a, p: P });
   const names = { lengths, loads: [{ tex: 'w' }, { tex: 'P' }] };
   // Recomputed by hand in the design's template catalogue, with the two choices of redundant.
-  const shared = { 'equilibrium-RA': '15.75', 'moment-B': '−19.74', 'largest-moment': '7.536' };
+  const shared = {
+    'equilibrium-RA': '15.75',
+    'moment-B': '−19.74',
+    'largest-moment': '7.536',
+    // wa(6a³ + 6a²L − L³)/48EI + Pa²(3L + 4a)/12EI
+    'deflection-7.800': '2.761',
+  };
 
-  test('with the prop as redundant', () => {
+  test('with the prop as redundant, each load by itself', () => {
     const steps = stepsOf({ beam, redundants: [prop], names });
     const shown = {
       ...shared,
@@ -131,6 +147,11 @@ describe('the force-method benchmark', () => {
       'equilibrium-MA': '14.96',
     };
     for (const [id, display] of Object.entries(shown)) expect(steps[id]?.display, id).toBe(display);
+    expect(steps['gap-B-P']).toMatchObject({
+      title: 'Deflection at B under P',
+      symbols: '\\delta_{B,P}=\\dfrac{PL^3}{3EI}+\\dfrac{PaL^2}{2EI}',
+    });
+    expect(steps['gap-B']?.symbols).toBe('\\delta_{B0}=\\delta_{B,w}+\\delta_{B,P}');
     expect(steps['gap-B']!.value! * 1e3).toBeCloseTo(240.49, 2);
     expect(steps['flexibility-B-B']!.value! * 1e6).toBeCloseTo(7.2267, 4);
   });
@@ -139,9 +160,18 @@ describe('the force-method benchmark', () => {
     const steps = stepsOf({ beam, redundants: [wall], names });
     const shown = { ...shared, compatibility: '14.96', 'equilibrium-RB': '33.28' };
     for (const [id, display] of Object.entries(shown)) expect(steps[id]?.display, id).toBe(display);
-    expect(steps['gap-A']?.title).toBe('Slope at A of the simple span, end A free to turn');
+    expect(steps['released']?.title).toContain('a simple span from A to B, overhanging B');
+    expect(steps['gap-A']?.title).toBe('Slope at A of the simple span, end A free to turn: together');
     expect(steps['closed-form']?.symbols).toBe('M_{A}=\\dfrac{wL^2}{8}-\\dfrac{wa^2}{4}-\\dfrac{Pa}{2}');
-    expect(steps['check']?.title).toBe('Check: deflection at B from the other redundant');
+  });
+
+  test('with the wall’s reaction as redundant, the same: a span that is guided at A', () => {
+    const steps = stepsOf({ beam, redundants: [root], names });
+    const { 'equilibrium-RA': _, ...others } = shared;
+    const shown = { ...others, compatibility: '15.75', 'equilibrium-MA': '14.96' };
+    for (const [id, display] of Object.entries(shown)) expect(steps[id]?.display, id).toBe(display);
+    expect(steps['gap-A-w']?.symbols).toBe('\\delta_{A,w}=\\dfrac{5wL^4}{24EI}-\\dfrac{wa^2L^2}{4EI}');
+    expect(steps['flexibility-A-A']?.charts?.[0]?.source).toContain('case 1f');
   });
 });
 
@@ -153,18 +183,45 @@ describe('letters', () => {
       'EI=9\\,963\\,\\mathrm{kNm^2},\\quad L_1=6\\,\\mathrm{m},\\quad L_2=1.8\\,\\mathrm{m},\\quad w_1=5.517\\,\\mathrm{kN/m},\\quad a_1=2\\,\\mathrm{m},\\quad P_1=6\\,\\mathrm{kN}',
     );
     expect(steps['given']?.note).toBe(
-      'Here a is measured from the support at its left, or from the left end.',
+      'Worked in kN and m. Here a is measured from the support at its left, or from the left end.',
     );
+    expect(steps['gap-A-P1']?.title).toBe('Slope at A under P₁');
   });
 
   test('a load that is split between groups is one load of the derivation', () => {
-    const beam = overhang(line(0, L + a, w / 4), line(0, L + a, (3 * w) / 4));
-    const steps = stepsOf({
-      beam,
-      redundants: [prop],
-      names: { lengths, loads: [{ tex: 'w' }, { tex: 'w' }] },
-    });
-    expect(steps['closed-form']?.symbols).toBe('R_{B}=\\dfrac{3wL}{8}+wa+\\dfrac{3wa^2}{4L}');
+    for (const [own, loads] of [
+      ['w', [line(0, L + a, w / 4), line(0, L + a, (3 * w) / 4)]],
+      [
+        'P',
+        [
+          { kind: 'point' as const, at: L, p: 1000 },
+          { kind: 'point' as const, at: L, p: 2000 },
+        ],
+      ],
+      [
+        'M_0',
+        [
+          { kind: 'couple' as const, at: L, m: 1000 },
+          { kind: 'couple' as const, at: L, m: 2000 },
+        ],
+      ],
+      [
+        '\\kappa',
+        [
+          { kind: 'curvature' as const, from: 0, to: L, kappa: 1e-3 },
+          { kind: 'curvature' as const, from: 0, to: L, kappa: 2e-3 },
+        ],
+      ],
+    ] as const) {
+      const named = loads.map(() => ({ tex: own }));
+      const steps = stepsOf({
+        beam: overhang(...loads),
+        redundants: [prop],
+        names: { lengths, loads: named },
+      });
+      expect(steps['closed-form']?.symbols).toContain(own);
+      expect(steps['given']?.symbols).not.toContain('_1');
+    }
   });
 
   test('a letter that stands for two sizes keeps the first, and the other gets a number', () => {
@@ -176,224 +233,29 @@ describe('letters', () => {
     });
     expect(steps['given']?.symbols).toContain('w_1=11.034\\,\\mathrm{kN/m}');
   });
-});
 
-describe('other beams', () => {
-  test('two spans: the moment over the middle support is −wL²/8, and the note says that it hogs', () => {
-    const beam = read({
-      length: 10,
-      ei: 2e7,
-      supports: [0, 5, 10].map((at) => ({ at, kind: 'roller' as const })),
-      loads: [line(0, 10, 8000)],
-    });
-    const names = {
-      lengths: [0, 5].map((from) => ({ from, to: from + 5, tex: 'L' })),
-      loads: [{ tex: 'w' }],
-    };
-    const steps = stepsOf({ beam, names });
-    expect(steps['closed-form']?.symbols).toBe('M_{B}=-\\dfrac{wL^2}{8}');
-    expect(steps['compatibility']).toMatchObject({
-      display: '−25.00',
-      note: 'Negative: the beam hogs there.',
-    });
-  });
-
-  test('a settling prop: the two must differ by the settlement', () => {
-    const beam = read({
-      length: 5,
-      ei: 2e7,
-      supports: [
-        { at: 0, kind: 'fixed' },
-        { at: 5, kind: 'roller', rise: -0.01 },
-      ],
-    });
+  test('the own weight is called that', () => {
     const steps = stepsOf({
-      beam,
+      beam: overhang(line(0, L + a, w), line(0, L + a, 400)),
       redundants: [prop],
-      names: { lengths: [{ from: 0, to: 5, tex: 'L' }], loads: [] },
+      names: { lengths, loads: [{ tex: 'w' }, { tex: 'w_{\\text{self}}' }] },
     });
-    expect(steps['compatibility']?.symbols).toContain('=\\Delta_{B}\\quad\\Rightarrow');
-    expect(steps['closed-form']?.symbols).toBe('R_{B}=-\\dfrac{3\\Delta_{B}EI}{L^3}');
-    expect(steps['compatibility']?.note).toMatch(/acts downward/);
+    expect(steps['gap-B-wtextself']?.title).toBe('Deflection at B under the own weight');
   });
 
-  test('a sprung prop: its flexibility has 1/k beside L³/3EI', () => {
-    const beam = read({
-      length: 5,
-      ei: 2e7,
-      supports: [
-        { at: 0, kind: 'fixed' },
-        { at: 5, kind: 'free', kv: 1e6 },
-      ],
-      loads: [line(0, 5, 8000)],
-    });
+  test('a given number is written as it was given, a result to the figures it needs', () => {
     const steps = stepsOf({
-      beam,
+      beam: overhang(line(0, L + a, 5517.25)),
       redundants: [prop],
-      names: { lengths: [{ from: 0, to: 5, tex: 'L' }], loads: [{ tex: 'w' }] },
+      names: { lengths, loads: [{ tex: 'w' }] },
     });
-    expect(steps['flexibility-B-B']?.symbols).toBe('f_{BB}=\\dfrac{L^3}{3EI}+\\dfrac{1}{k_{B}}');
+    expect(steps['equilibrium-RA']?.numbers).toMatch(/^5\.51725\\times\(6\+1\.8\)-[\d.]+$/);
   });
 
-  test('two redundants: reciprocal coefficients are shown equal, and the stiffness method checks', () => {
-    const beam = read({
-      length: 5,
-      ei: 2e7,
-      supports: [
-        { at: 0, kind: 'fixed' },
-        { at: 5, kind: 'fixed' },
-      ],
-      loads: [line(0, 5, 8000)],
-    });
-    const steps = stepsOf({ beam });
-    expect(steps['reciprocal-B-A']).toMatchObject({
-      symbols: 'f_{BA}=f_{AB}',
-      value: steps['flexibility-A-B']?.value,
-    });
-    expect(steps['redundant-A']).toMatchObject({ display: '16.67', key: true });
-    expect(steps['check']?.title).toBe('Check: the stiffness method gives the same moment at A');
-  });
-
-  test('five redundants: the equations stand in matrix form', () => {
-    const beam = read({
-      length: 24,
-      ei: 2e7,
-      supports: Array.from({ length: 7 }, (_, k) => ({ at: 4 * k, kind: 'roller' as const })),
-      loads: [line(0, 24, 8000)],
-    });
-    const steps = stepsOf({ beam });
-    expect(steps['count']?.value).toBe(5);
-    expect(steps['compatibility']?.symbols).toContain('\\begin{bmatrix}f_{BB}&f_{BC}&0&0&0');
-    expect(Object.values(steps).filter(({ key }) => key)).toHaveLength(5);
-  });
-
-  test('a step in EI, for which there is no chart: integrals, piece by piece', () => {
-    const beam = read({
-      length: 6,
-      segments: [
-        { from: 0, to: 2, ei: 2e7 },
-        { from: 2, to: 6, ei: 1e7 },
-      ],
-      supports: [
-        { at: 0, kind: 'fixed' },
-        { at: 6, kind: 'roller' },
-      ],
-      loads: [line(0, 6, 8000)],
-    });
-    const steps = stepsOf({ beam, redundants: [prop] });
-    expect(steps['gap-B']?.symbols).toBe('\\delta_{B0}=-\\int\\dfrac{m_{B}\\,M_{0}}{EI}\\,dx');
-    expect(steps['gap-B']?.numbers).toMatch(/^[\d.]+\+[\d.]+=[\d.]+\\,\\mathrm\{m\}$/);
-    expect(steps['gap-B']?.charts).toBeUndefined();
-  });
-
-  test('a determinate beam: equilibrium, moments, then deflection by the chart', () => {
-    const beam = read({
-      length: 4,
-      ei: 2e7,
-      supports: [0, 4].map((at) => ({ at, kind: 'roller' as const })),
-      loads: [line(0, 4, 8000)],
-    });
-    const steps = stepsOf({
-      beam,
-      names: { lengths: [{ from: 0, to: 4, tex: 'L' }], loads: [{ tex: 'w' }] },
-    });
-    expect(Object.keys(steps)).toEqual([
-      'given',
-      'count',
-      'equilibrium-RA',
-      'equilibrium-RB',
-      'largest-moment',
-      'deflection-2.000',
-    ]);
-    expect(steps['deflection-2.000']?.symbols).toBe('\\delta=\\dfrac{5wL^4}{384EI}');
-    expect(steps['count']).toMatchObject({
-      title: 'As many reactions as equations: equilibrium gives them all',
-      display: '0',
-    });
-  });
-
-  test('a suspended span: parts between hinges, then the largest deflection by a unit load', () => {
-    const beam = read({
-      length: 12,
-      ei: 2e7,
-      hinges: [7],
-      supports: [0, 5, 12].map((at) => ({ at, kind: 'roller' as const })),
-      loads: [line(0, 12, 8000)],
-    });
-    const steps = stepsOf({ beam });
-    expect(steps['equilibrium-Vh']?.title).toBe(
-      'Moments about C of the part from the hinge to C: the shear right of the hinge',
-    );
-    expect(steps['deflection']?.symbols).toBe('\\delta=\\int\\dfrac{m_{1}\\,M}{EI}\\,dx');
-  });
-
-  test('no load at all has nothing to find, and says so with zeros', () => {
+  test('no load at all has nothing to find, and says so', () => {
     const steps = stepsOf({ beam: overhang() });
+    expect(steps['gap-A']).toMatchObject({ symbols: '\\theta_{A0}=0', numbers: '', value: 0 });
     expect(steps['compatibility']?.value).toBe(0);
     expect(steps['compatibility']?.note).toBeUndefined();
-  });
-});
-
-describe('letters of a simple span', () => {
-  const span = (...loads: NonNullable<BeamDocument['loads']>) =>
-    read({ length: 6, ei: 1e7, supports: [0, 6].map((at) => ({ at, kind: 'roller' as const })), loads });
-  const whole = { from: 0, to: 6, tex: 'L' };
-
-  test('a load that rises from nothing carries its letter where it is largest: wL/6, wL/3', () => {
-    for (const [load, reaction] of [
-      [line(0, 6, 0, 12e3), '\\dfrac{wL}{6}'],
-      [line(0, 6, 12e3, 0), '\\dfrac{wL}{3}'],
-    ] as const) {
-      const steps = stepsOf({ beam: span(load), names: { lengths: [whole], loads: [{ tex: 'w' }] } });
-      expect(steps['equilibrium-RA']?.symbols).toBe(`R_{A}=${reaction}`);
-      expect(steps['given']?.symbols).not.toContain('w');
-    }
-  });
-
-  test('the whole span comes before its parts: Pb/L with b written L − a', () => {
-    const steps = stepsOf({
-      beam: span({ kind: 'point', at: 4, p: 20e3 }),
-      names: {
-        lengths: [{ from: 0, to: 4, tex: 'a' }, { from: 4, to: 6, tex: 'b' }, whole],
-        loads: [{ tex: 'P' }],
-      },
-    });
-    expect(steps['equilibrium-RA']?.symbols).toBe('R_{A}=\\dfrac{P\\,(L-a)}{L}');
-  });
-
-  test('a load at midspan stands at L/2: PL/4, PL³/48EI', () => {
-    const steps = stepsOf({
-      beam: span({ kind: 'point', at: 3, p: 20e3 }),
-      names: { lengths: [whole], loads: [{ tex: 'P' }] },
-    });
-    expect(steps['equilibrium-RA']?.symbols).toBe('R_{A}=\\dfrac{P}{2}');
-    expect(steps['largest-moment']?.symbols).toBe('M(\\tfrac{L}{2})=\\dfrac{R_{A}L}{2}');
-    expect(steps['deflection-3.000']?.symbols).toContain('=\\dfrac{PL^3}{48EI}');
-    expect(steps['given']?.symbols).not.toContain('a_1');
-  });
-
-  test('the moment is given on both sides of a couple: M₀a/L, then −M₀b/L', () => {
-    const steps = stepsOf({
-      beam: span({ kind: 'couple', at: 2, m: 15e3 }),
-      names: { lengths: [whole, { from: 0, to: 2, tex: 'a' }], loads: [{ tex: 'M_0' }] },
-    });
-    expect(steps['moment-couple-2.000-left']).toMatchObject({
-      title: expect.stringContaining('Moment just left of the couple'),
-      symbols: 'M_{a,\\mathrm{left}}=R_{A}a',
-      display: '5.000',
-    });
-    expect(steps['moment-couple-2.000-right']?.display).toBe('−10.00');
-  });
-
-  test('a couple at a pinned end is the moment there: −M₀ at A', () => {
-    const steps = stepsOf({
-      beam: span({ kind: 'couple', at: 0, m: 15e3 }),
-      names: { lengths: [whole], loads: [{ tex: 'M_0' }] },
-    });
-    expect(steps['moment-couple-0.000']).toMatchObject({
-      title: 'Moment at A: the couple put on there',
-      symbols: 'M_{A}=-M_0',
-      display: '−15.00',
-    });
   });
 });

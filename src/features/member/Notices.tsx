@@ -2,6 +2,7 @@ import { useEffect, useRef, useState } from 'react';
 import { Button } from '@/components/ui/Button';
 import { Radio } from '@/components/ui/Choice';
 import { Notice } from '@/components/ui/Notice';
+import { paths } from '@/paths';
 import type { MemberView, Pin, SaveMember } from './member';
 import type { SaveState } from './use-member';
 import { bodyOf, differencesOf, settle } from './workspace';
@@ -9,20 +10,30 @@ import { bodyOf, differencesOf, settle } from './workspace';
 /** What is newer in the library than what the member pins. It is said; nothing is upgraded. */
 export function PinNotices({ member }: { readonly member: MemberView }) {
   const { template, criteria, section } = member;
-  const lines = [template, ...(criteria ? [criteria] : [])].flatMap((pin) => pinLine(pin));
-  const edition: Line[] =
-    section?.newer == null
+  const lines = [template, ...(criteria ? [criteria] : [])].flatMap((pin) => [
+    ...pinLine(pin),
+    ...factLines(`${pin.reference} revision ${pin.revision}`, pin),
+  ]);
+  const edition: Line[] = [
+    ...(section ? editionLines(section) : []),
+    ...(section?.newer == null
       ? []
       : [
           {
             title: `Edition ${section.newer} of ${section.table_name} is issued. This member still uses edition ${section.edition}.`,
             detail: 'Its section keeps the figures of that edition.',
-            tone: 'caution',
+            tone: 'caution' as const,
           },
-        ];
-  return [...lines, ...edition].map(({ title, detail, tone }) => (
+        ]),
+  ];
+  return [...lines, ...edition].map(({ title, detail, tone, recall }) => (
     <Notice key={title} title={title} tone={tone}>
       <p>{detail}</p>
+      {recall && (
+        <p>
+          <a href={paths.recall(recall)}>Open the recall</a>
+        </p>
+      )}
     </Notice>
   ));
 }
@@ -31,6 +42,54 @@ interface Line {
   readonly title: string;
   readonly detail: string;
   readonly tone: 'caution' | 'error';
+  readonly recall?: string;
+}
+
+type Facts = Pick<Pin, 'recall' | 'review' | 'review_by' | 'withdrawn_ancestor'>;
+
+/** What is to be known of a pinned revision besides its state: its recall, its review, what it was made from. */
+function factLines(name: string, { recall, review, review_by, withdrawn_ancestor: ancestor }: Facts): Line[] {
+  const lines: Line[] = [];
+  if (recall && !recall.closed)
+    lines.push({
+      title: `${name} is recalled.`,
+      detail: recall.decided
+        ? 'What becomes of this member has been decided.'
+        : 'What becomes of this member has to be decided, by name.',
+      tone: recall.decided ? 'caution' : 'error',
+      recall: recall.id,
+    });
+  if (review === 'due' || review === 'expired')
+    lines.push({
+      title: `${name} was to be reviewed by ${review_by}.`,
+      detail:
+        review === 'due'
+          ? 'Ask a librarian whether it still holds.'
+          : 'New members may not use it any more. Ask a librarian whether it still holds.',
+      tone: 'caution',
+    });
+  if (ancestor)
+    lines.push({
+      title: `${name} was made from ${ancestor.reference} revision ${ancestor.revision}, which was withdrawn: ${ancestor.reason}`,
+      detail: 'Check whether the fault was taken over.',
+      tone: 'caution',
+    });
+  return lines;
+}
+
+function editionLines(section: NonNullable<MemberView['section']>): Line[] {
+  const name = `Edition ${section.edition} of ${section.table_name}`;
+  const withdrawn: Line[] =
+    section.state === 'withdrawn'
+      ? [
+          {
+            title: `${name} was withdrawn: ${section.withdrawal_reason}`,
+            detail: 'This member still uses it. Check what the fault means here before the member goes on.',
+            tone: 'error',
+          },
+        ]
+      : [];
+  return [...withdrawn, ...factLines(name, section)];
 }
 
 function pinLine({ reference, revision, state, newer, newer_note, withdrawal_reason }: Pin): Line[] {

@@ -4,10 +4,11 @@ import { withPractice } from '@/db/tenancy';
 import type { Template } from '@/engine/template';
 import { recordAudit } from '@/features/audit/audit.server';
 import { type Actor, type Found, type JobRow, openJob, type Page, touchJob } from '@/features/job/job.server';
+import { decideByUpgrade } from '@/features/review/recall.server';
 import { AppError, invalid, stale } from '@/lib/app-error';
 import { type Assessment, assessMember } from './assess.server';
 import type { MemberItem, MemberView, NewMember, SaveMember, TriedView, TryMember } from './member';
-import { loadPins, type Pins, placeCriteria, placeSection, placeTemplate } from './pins.server';
+import { loadPins, moveTemplate, type Pins, placeCriteria, placeSection, placeTemplate } from './pins.server';
 import { findMember, pageOfMembers, requireMember, type Settings, toMemberView } from './row.server';
 
 /** The members of a job by their marks, removed ones too. */
@@ -88,11 +89,12 @@ export function saveMember(
     const was = await toMemberView(tx, before, job.number, pinned);
     if (before.version !== version) throw stale(was);
     const pins = {
-      template: pinned.template,
-      criteria: await placeCriteria(tx, practiceId, body.criteria, pinned.criteria),
-      section: await placeSection(tx, practiceId, body.section, pinned.section),
+      template: await moveTemplate(tx, practiceId, pinned.template, body.template_revision),
+      criteria: await placeCriteria(tx, practiceId, body.criteria, pinned.criteria, body.criteria_revision),
+      section: await placeSection(tx, practiceId, body.section, pinned.section, body.section_edition),
     };
-    const given = { ...body, parameters: whole(pins.template.document, body.parameters) };
+    const parameters = carryOver(pinned.template.document, pins.template.document, body.parameters);
+    const given = { ...body, parameters: whole(pins.template.document, parameters) };
     const assessment = assessMember(pins, toGiven(given), job.unitSystem);
     refuseUnready(body, assessment);
     const [saved] = await tx
@@ -104,6 +106,7 @@ export function saveMember(
     const view = await toMemberView(tx, after, job.number, saved && pins);
     if (!saved) throw stale(view);
     await touchJob(tx, practiceId, job.id);
+    await decideByUpgrade(tx, actor, before.id);
     await recordAudit(tx, actor, {
       action: body.status === 'removed' && was.status !== 'removed' ? 'member.remove' : 'member.save',
       subjectKind: 'member',
@@ -122,24 +125,38 @@ export function tryMember(actor: Actor, number: string, mark: string, body: TryM
     const job = await openJob(tx, actor, number, 'member.read');
     const row = await requireMember(tx, practiceId, job.id, mark);
     const pinned = await loadPins(tx, practiceId, row);
-    const { criteria, section } = body;
+    const { criteria = pinned.criteria?.slug ?? null, section = choiceOf(pinned.section) } = body;
     const pins = {
-      template: pinned.template,
-      criteria:
-        criteria === undefined
-          ? pinned.criteria
-          : await placeCriteria(tx, practiceId, criteria, pinned.criteria),
-      section:
-        section === undefined ? pinned.section : await placeSection(tx, practiceId, section, pinned.section),
+      template: await moveTemplate(tx, practiceId, pinned.template, body.template_revision),
+      criteria: await placeCriteria(tx, practiceId, criteria, pinned.criteria, body.criteria_revision),
+      section: await placeSection(tx, practiceId, section, pinned.section, body.section_edition),
     };
     const given = {
-      parameters: { ...row.parameters, ...body.parameters },
+      parameters: carryOver(pinned.template.document, pins.template.document, {
+        ...row.parameters,
+        ...body.parameters,
+      }),
       self_weight: body.self_weight ?? row.settings.self_weight,
       patterns: body.patterns ?? row.settings.patterns,
       redundants: body.redundants === undefined ? row.settings.redundants : body.redundants,
     };
     return assessMember(pins, given, job.unitSystem);
   });
+}
+
+const choiceOf = (section: Pins['section']): SaveMember['section'] =>
+  section && {
+    designation: section.row.values.designation,
+    table: section.row.table,
+    material: section.material.id,
+  };
+
+/** What is given for another revision of the template: without the parameters that it has no longer. */
+function carryOver(from: Template, to: Template, given: SaveMember['parameters']): SaveMember['parameters'] {
+  const has = ({ parameters }: Template, symbol: string) => parameters.some((one) => one.symbol === symbol);
+  return Object.fromEntries(
+    Object.entries(given).filter(([symbol]) => has(to, symbol) || !has(from, symbol)),
+  );
 }
 
 /** Every parameter of the template, so that a member says all of what it was evaluated at. */

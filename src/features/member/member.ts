@@ -1,5 +1,6 @@
 import { z } from 'zod';
 import { Redundant } from '@/features/beam/request';
+import { pinFacts } from '@/features/review/pin';
 import { REVISION_STATES } from '@/features/review/review';
 import { sectionChoice } from '@/features/template/request';
 import { storedResult } from './result';
@@ -43,6 +44,17 @@ const withDefaults = {
   redundants: inputs.redundants.default(null),
 };
 
+/**
+ * The revision of the same document to move to, which must be issued; what is left out stays as it is pinned.
+ * Named by its number, so that nobody is moved to one that they have not compared with.
+ */
+const moves = {
+  template_revision: z.int().positive().optional(),
+  criteria_revision: z.int().positive().optional(),
+  section_edition: z.int().positive().optional(),
+};
+export type Moves = { readonly [K in keyof typeof moves]?: number | undefined };
+
 const title = line(120);
 const purpose = line(500);
 
@@ -84,7 +96,7 @@ export const NewMember = z
   .check(askReasons);
 export type NewMember = z.output<typeof NewMember>;
 
-/** PUT /api/v1/jobs/{number}/members/{mark}: the whole of what may change. The template's revision stays pinned. */
+/** PUT /api/v1/jobs/{number}/members/{mark}: the whole of what may change. Pinned revisions stay unless one is named. */
 export const SaveMember = z
   .strictObject({
     title: title.default(''),
@@ -92,12 +104,13 @@ export const SaveMember = z
     status: z.enum(MEMBER_STATUSES).default('draft'),
     reason: line(300).default(''),
     ...withDefaults,
+    ...moves,
   })
   .check(askReasons);
 export type SaveMember = z.output<typeof SaveMember>;
 
 /** POST …/evaluate: values to try; what is not given is as saved. */
-export const TryMember = z.strictObject(inputs).partial();
+export const TryMember = z.strictObject({ ...inputs, ...moves }).partial();
 export type TryMember = z.output<typeof TryMember>;
 
 /** What a member pins of the library. `newer`: the issued revision, where it is another one. */
@@ -110,6 +123,7 @@ const Pin = z.strictObject({
   newer: z.int().nullable(),
   newer_note: z.string().nullable(),
   withdrawal_reason: z.string().nullable(),
+  ...pinFacts,
 });
 export type Pin = z.output<typeof Pin>;
 
@@ -118,8 +132,11 @@ const SectionPin = z.strictObject({
   table: z.string(),
   table_name: z.string(),
   edition: z.int(),
+  state: z.enum(REVISION_STATES),
   newer: z.int().nullable(),
+  withdrawal_reason: z.string().nullable(),
   material: z.string(),
+  ...pinFacts,
 });
 
 const Evaluated = {
@@ -166,6 +183,8 @@ export const MemberItem = z.strictObject({
   /** Supports that are pulled up, and the like. */
   findings: z.array(z.string()),
   unproven: z.boolean(),
+  /** It has a use to decide in an open recall. */
+  recalled: z.boolean(),
   version: z.int(),
   changed_by: z.string(),
   changed_at: z.iso.datetime(),

@@ -4,6 +4,8 @@ import type { Material } from '@/engine/section';
 import { materialFor } from '@/engine/section';
 import type { Template } from '@/engine/template';
 import { findRevision, type LibraryRevision, revisionsById } from '@/features/review/library.server';
+import type { PinFacts } from '@/features/review/pin';
+import { holdForUse } from '@/features/review/pin.server';
 import {
   type ChosenSection,
   chooseMaterial,
@@ -90,20 +92,55 @@ export async function placeTemplate(tx: Tx, practiceId: string, slug: string): P
       'not_issued',
       `${found.reference} has no issued revision${found.withdrawalReason ? `: it was withdrawn (${found.withdrawalReason})` : ''}. Members are made from issued templates only; choose another.`,
     );
+  await holdForUse(tx, practiceId, found.revisionId, '/template');
   return asTemplate(found);
 }
 
-/** Criteria as named: those that are pinned stay as they are, others come in their issued revision. */
+/** The template that is pinned, or the revision of it to move to. */
+export async function moveTemplate(
+  tx: Tx,
+  practiceId: string,
+  pinned: Pins['template'],
+  number: number | undefined,
+): Promise<Pins['template']> {
+  if (number === undefined || number === pinned.number) return pinned;
+  return asTemplate(await issuedRevision(tx, practiceId, 'template', pinned.slug, number));
+}
+
+/** A revision of a document that a member pins already: its review does not stand in the way of leaving an older one. */
+async function issuedRevision(
+  tx: Tx,
+  practiceId: string,
+  kind: 'template' | 'criteria',
+  slug: string,
+  number: number,
+): Promise<LibraryRevision> {
+  const at = `/${kind}_revision`;
+  const found = await findRevision(tx, practiceId, { kind, slug, number });
+  if (!found)
+    throw refused(at, 'unknown_revision', `“${slug}” has no revision ${number}. Choose one that is issued.`);
+  await holdForUse(tx, practiceId, found.revisionId, at, { isNew: false });
+  return found;
+}
+
+/** Criteria as named: those that are pinned stay as they are unless moved, others come in their issued revision. */
 export async function placeCriteria(
   tx: Tx,
   practiceId: string,
   slug: string | null,
   pinned: Pins['criteria'],
+  number?: number,
 ): Promise<Pins['criteria']> {
   if (slug === null) return null;
-  if (pinned?.slug === slug) return pinned;
+  if (pinned?.slug === slug)
+    return number === undefined || number === pinned.number
+      ? pinned
+      : asCriteria(await issuedRevision(tx, practiceId, 'criteria', slug, number));
   const found = await findRevision(tx, practiceId, { kind: 'criteria', slug });
-  if (found?.state === 'issued') return asCriteria(found);
+  if (found?.state === 'issued') {
+    await holdForUse(tx, practiceId, found.revisionId, '/criteria');
+    return asCriteria(found);
+  }
   throw refused(
     '/criteria',
     found ? 'not_issued' : 'unknown_criteria',
@@ -111,19 +148,40 @@ export async function placeCriteria(
   );
 }
 
-/** A section as named: the row that is pinned stays, another comes from the issued edition of its table. */
+/**
+ * A section as named: the row that is pinned stays unless its table is moved to another edition; another section comes
+ * from the issued edition of its table.
+ */
 export async function placeSection(
   tx: Tx,
   practiceId: string,
   choice: SaveMember['section'],
   pinned: Pins['section'],
+  edition?: number,
 ): Promise<Pins['section']> {
   if (choice === null) return null;
   const material = chooseMaterial(choice.material);
   const { row } = pinned ?? {};
   const isSame = row?.values.designation === choice.designation && (choice.table ?? row.table) === row.table;
-  return { row: row && isSame ? row : await chooseSection(tx, practiceId, choice), material };
+  if (row && isSame && (edition === undefined || edition === row.edition)) return { row, material };
+  const chosen = await chooseSection(tx, practiceId, choice);
+  if (edition !== undefined && edition !== chosen.edition)
+    throw refused(
+      '/section_edition',
+      'not_issued',
+      `Edition ${edition} of ${chosen.tableName} is not issued; edition ${chosen.edition} is. Compare with that one.`,
+    );
+  await holdForUse(tx, practiceId, chosen.revisionId, '/section', { isNew: !isSame });
+  return { row: chosen, material };
 }
+
+export const NO_FACTS: PinFacts = {
+  recall: null,
+  review: 'none',
+  review_by: null,
+  withdrawn_ancestor: null,
+  confirmed: false,
+};
 
 /** A pin as it is shown, with the issued revision where that is another one by now. */
 export async function toPin(
@@ -131,6 +189,7 @@ export async function toPin(
   practiceId: string,
   kind: 'template' | 'criteria',
   pinned: LibraryRevision,
+  facts: PinFacts = NO_FACTS,
 ): Promise<Pin> {
   const { slug, reference, name, number, state, withdrawalReason } = pinned;
   const issued = state === 'issued' ? undefined : await findRevision(tx, practiceId, { kind, slug });
@@ -144,6 +203,7 @@ export async function toPin(
     newer: newer?.number ?? null,
     newer_note: newer?.changeNote ?? null,
     withdrawal_reason: withdrawalReason,
+    ...facts,
   };
 }
 

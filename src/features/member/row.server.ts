@@ -5,10 +5,11 @@ import { person } from '@/db/schema/account';
 import { member } from '@/db/schema/member';
 import { section } from '@/db/schema/section';
 import { type LibraryRevision, revisionsById } from '@/features/review/library.server';
+import { factsOfPins, recalledMembers } from '@/features/review/pin.server';
 import { notFound } from '@/lib/app-error';
 import { type MemberItem, type MemberView, SaveMember } from './member';
 import { readResult } from './migrate';
-import { loadPins, newerEdition, type Pins, toPin } from './pins.server';
+import { loadPins, NO_FACTS, newerEdition, type Pins, toPin } from './pins.server';
 import { governingOf } from './result';
 
 const creator = aliasedTable(person, 'creator');
@@ -111,13 +112,18 @@ export async function pageOfMembers(
     ...new Set(rows.map(({ templateRevisionId }) => templateRevisionId)),
   ]);
   const templates = new Map(pinned.map((one) => [one.revisionId, one]));
+  const recalled = await recalledMembers(
+    tx,
+    practiceId,
+    rows.map(({ id }) => id),
+  );
   return {
-    rows: rows.map((row) => toMemberItem(row, templates.get(row.templateRevisionId))),
+    rows: rows.map((row) => toMemberItem(row, templates.get(row.templateRevisionId), recalled.has(row.id))),
     isLast: found.length <= limit,
   };
 }
 
-function toMemberItem(row: MemberRow, template: LibraryRevision | undefined): MemberItem {
+function toMemberItem(row: MemberRow, template: LibraryRevision | undefined, recalled: boolean): MemberItem {
   const governing = governingOf(row.result);
   const findings = row.result?.kind === 'result' ? (row.result.checks?.findings ?? []) : [];
   return {
@@ -139,6 +145,7 @@ function toMemberItem(row: MemberRow, template: LibraryRevision | undefined): Me
     },
     findings: findings.map(({ title }) => title),
     unproven: row.result?.kind === 'fault',
+    recalled,
     version: row.version,
     changed_by: row.changer,
     changed_at: row.changedAt.toISOString(),
@@ -149,6 +156,13 @@ function toMemberItem(row: MemberRow, template: LibraryRevision | undefined): Me
 export async function toMemberView(tx: Tx, row: MemberRow, job: string, pins?: Pins): Promise<MemberView> {
   const { practiceId, settings } = row;
   const { template, criteria, section } = pins ?? (await loadPins(tx, practiceId, row));
+  const pinned = [template.revisionId, criteria?.revisionId, section?.row.revisionId];
+  const facts = await factsOfPins(
+    tx,
+    practiceId,
+    row.id,
+    pinned.filter((id) => id !== undefined),
+  );
   return {
     job,
     mark: row.mark,
@@ -156,7 +170,7 @@ export async function toMemberView(tx: Tx, row: MemberRow, job: string, pins?: P
     purpose: row.purpose,
     status: row.status,
     version: row.version,
-    template: await toPin(tx, practiceId, 'template', template),
+    template: await toPin(tx, practiceId, 'template', template, facts.get(template.revisionId)),
     parameters: row.parameters,
     ...settings,
     section: section && {
@@ -164,10 +178,13 @@ export async function toMemberView(tx: Tx, row: MemberRow, job: string, pins?: P
       table: section.row.table,
       table_name: section.row.tableName,
       edition: section.row.edition,
+      state: section.row.editionState,
       newer: await newerEdition(tx, practiceId, section.row),
+      withdrawal_reason: section.row.withdrawalReason,
+      ...(facts.get(section.row.revisionId) ?? NO_FACTS),
       material: section.material.id,
     },
-    criteria: criteria && (await toPin(tx, practiceId, 'criteria', criteria)),
+    criteria: criteria && (await toPin(tx, practiceId, 'criteria', criteria, facts.get(criteria.revisionId))),
     result: row.result,
     fingerprint: row.fingerprint,
     engine_version: row.engineVersion,

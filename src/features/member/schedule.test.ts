@@ -11,6 +11,7 @@ const item = (mark: string, ratio: number | null, status: MemberItem['status'] =
   governing: ratio === null ? null : { title: 'Bending stress', place: 'at A', ratio },
   findings: [],
   unproven: false,
+  recalled: false,
   version: 1,
   changed_by: 'A',
   changed_at: '2026-01-01T00:00:00.000Z',

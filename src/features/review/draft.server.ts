@@ -20,6 +20,7 @@ import { namesOf } from './people.server';
 import { isReferenceTaken, nameIn, referenceIn, referenceTaken } from './reference.server';
 import { stateName } from './review';
 import { type Actor, type DocumentRow, keyOf, type RevisionRow, requireRevision } from './rows.server';
+import { relativeRevision } from './uses.server';
 import { asWritten } from './written';
 import { readerOf } from './written.server';
 
@@ -215,14 +216,6 @@ export async function toDraftView(tx: Tx, row: RevisionRow, known?: readonly Fau
 }
 
 async function parentOf(tx: Tx, practiceId: string, { derivedFromId }: DocumentRow) {
-  if (derivedFromId === null) return null;
-  const [parent] = await tx
-    .select({ slug: document.slug, name: document.name, revision: revision.number, state: revision.state })
-    .from(revision)
-    .innerJoin(
-      document,
-      and(eq(document.practiceId, revision.practiceId), eq(document.id, revision.documentId)),
-    )
-    .where(and(eq(revision.practiceId, practiceId), eq(revision.id, derivedFromId)));
-  return parent ?? null;
+  const found = derivedFromId && (await relativeRevision(tx, practiceId, derivedFromId));
+  return found ? { slug: found.slug, name: found.name, revision: found.revision, state: found.state } : null;
 }

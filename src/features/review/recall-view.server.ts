@@ -5,7 +5,6 @@ import { document, revision } from '@/db/schema/library';
 import { recall, recallUse } from '@/db/schema/review';
 import { withPractice } from '@/db/tenancy';
 import { requirePermission } from '@/features/account/permission';
-import type { Found, Page } from '@/features/job/job.server';
 import { MEMBER_STATUSES } from '@/features/member/terms';
 import { notFound } from '@/lib/app-error';
 import { namesOf } from './people.server';
@@ -107,11 +106,10 @@ interface Narrowing {
 export function listRecalls(
   actor: Actor,
   { state, mine }: Narrowing,
-  { after = '0', limit }: Page,
-): Promise<Found<RecallItem>> {
+  { from, limit }: { readonly from: number; readonly limit: number },
+): Promise<{ items: RecallItem[]; next: number | null; total: number }> {
   requirePermission(actor, 'library.read');
   return withPractice(actor, async (tx) => {
-    const from = Number(after);
     const rows = await select(
       tx,
       actor,
@@ -125,7 +123,7 @@ export function listRecalls(
     );
     const items = rows.slice(from, from + limit).map(toItem);
     const end = from + limit;
-    return { items, next: end < rows.length ? String(end) : null, total: rows.length };
+    return { items, next: end < rows.length ? end : null, total: rows.length };
   });
 }
 

@@ -37,7 +37,15 @@ export async function requireDocument(tx: Tx, practiceId: string, key: DocumentK
   return found;
 }
 
-const select = (tx: Tx, practiceId: string, where: SQL | undefined): Promise<RevisionRow[]> =>
+type Order = SQL | typeof revision.id | typeof revision.number;
+
+/** Revisions whole, with their documents. */
+export const selectRevisions = (
+  tx: Tx,
+  practiceId: string,
+  where: SQL | undefined,
+  order: readonly Order[] = [],
+): Promise<RevisionRow[]> =>
   tx
     .select({ ...getTableColumns(revision), of: getTableColumns(document) })
     .from(revision)
@@ -46,10 +54,11 @@ const select = (tx: Tx, practiceId: string, where: SQL | undefined): Promise<Rev
       and(eq(document.practiceId, revision.practiceId), eq(document.id, revision.documentId)),
     )
     .where(and(eq(revision.practiceId, practiceId), where))
+    .orderBy(...order)
     .execute();
 
 export async function requireRevision(tx: Tx, practiceId: string, key: RevisionKey): Promise<RevisionRow> {
-  const [found] = await select(
+  const [found] = await selectRevisions(
     tx,
     practiceId,
     and(eq(document.kind, key.kind), eq(document.slug, key.slug), eq(revision.number, key.number)),
@@ -59,14 +68,14 @@ export async function requireRevision(tx: Tx, practiceId: string, key: RevisionK
 }
 
 export async function requireRevisionById(tx: Tx, practiceId: string, id: string): Promise<RevisionRow> {
-  const [found] = await select(tx, practiceId, eq(revision.id, id));
+  const [found] = await selectRevisions(tx, practiceId, eq(revision.id, id));
   if (!found) throw notFound('This revision');
   return found;
 }
 
 /** Every revision of a document but one. */
 export const otherRevisions = (tx: Tx, practiceId: string, documentId: string, but: string) =>
-  select(tx, practiceId, and(eq(revision.documentId, documentId), ne(revision.id, but)));
+  selectRevisions(tx, practiceId, and(eq(revision.documentId, documentId), ne(revision.id, but)));
 
 export const keyOf = ({ of, number }: RevisionRow): RevisionKey => ({
   kind: of.kind,

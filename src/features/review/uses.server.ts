@@ -2,6 +2,7 @@ import { and, eq, inArray, sql } from 'drizzle-orm';
 import type { Tx } from '@/db/client';
 import { document, revision } from '@/db/schema/library';
 import { member } from '@/db/schema/member';
+import { recall } from '@/db/schema/review';
 import { may } from '@/features/account/permission';
 import type { Actor } from './rows.server';
 
@@ -119,30 +120,40 @@ export async function derivedFrom(tx: Tx, practiceId: string, revisionId: string
 
 /** A withdrawn revision that a document goes back to, the nearest; null where there is none. */
 export async function withdrawnAncestor(tx: Tx, practiceId: string, documentId: string) {
-  const rows = await tx.execute<{ id: string }>(sql`
+  const [nearest] = await tx.execute<{ id: string }>(sql`
     with recursive line as (
       select derived_from_id as id, 1 as step from document where practice_id = ${practiceId} and id = ${documentId}
       union
       select parent.derived_from_id, line.step + 1 from line
         join revision on revision.practice_id = ${practiceId} and revision.id = line.id
         join document parent on parent.practice_id = ${practiceId} and parent.id = revision.document_id
-        where line.step < 20)
+        where line.step < ${MOST_STEPS})
     select revision.id from line join revision on revision.practice_id = ${practiceId} and revision.id = line.id
       where revision.state = 'withdrawn' order by line.step limit 1`);
-  const [nearest] = rows;
-  if (!nearest) return null;
+  return nearest ? relativeRevision(tx, practiceId, nearest.id) : null;
+}
+
+const MOST_STEPS = 20;
+
+/** A revision of another document, as it is shown beside one: its parent, or the ancestor that was withdrawn. */
+export async function relativeRevision(tx: Tx, practiceId: string, revisionId: string) {
   const [found] = await tx
     .select({
-      reference: document.reference,
+      kind: document.kind,
       slug: document.slug,
+      reference: document.reference,
+      name: document.name,
       revision: revision.number,
+      state: revision.state,
       reason: revision.withdrawalReason,
+      recall: recall.id,
     })
     .from(revision)
     .innerJoin(
       document,
       and(eq(document.practiceId, revision.practiceId), eq(document.id, revision.documentId)),
     )
-    .where(and(eq(revision.practiceId, practiceId), eq(revision.id, nearest.id)));
+    .leftJoin(recall, and(eq(recall.practiceId, revision.practiceId), eq(recall.revisionId, revision.id)))
+    .where(and(eq(revision.practiceId, practiceId), eq(revision.id, revisionId)));
   return found ?? null;
 }

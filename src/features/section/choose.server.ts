@@ -3,6 +3,7 @@ import type { Tx } from '@/db/client';
 import { document, revision } from '@/db/schema/library';
 import { section } from '@/db/schema/section';
 import { designationKey, MATERIALS, type Material, materialFor } from '@/engine/section';
+import type { RevisionState } from '@/features/review/review';
 import { type Fault, invalid } from '@/lib/app-error';
 import type { SectionValues } from './resolve';
 
@@ -12,7 +13,8 @@ export interface ChosenSection {
   readonly table: string;
   readonly tableName: string;
   readonly edition: number;
-  readonly editionState: string;
+  readonly editionState: RevisionState;
+  readonly withdrawalReason: string | null;
   readonly revisionId: string;
   readonly sha256: string;
   readonly documentId: string;
@@ -27,6 +29,7 @@ const COLUMNS = {
   tableName: document.name,
   edition: revision.number,
   editionState: revision.state,
+  withdrawalReason: revision.withdrawalReason,
   revisionId: section.revisionId,
   sha256: revision.sha256,
   documentId: revision.documentId,

@@ -1,0 +1,13 @@
+import { RecallView } from '@/features/review/recall';
+import { closeRecall } from '@/features/review/recall.server';
+import { endpoint } from '@/http/endpoint';
+import { idParam } from '@/http/params';
+
+export const POST = endpoint(
+  {
+    summary: 'Close a recall',
+    description: 'By a librarian or a principal, when every use has a decision (409 before).',
+    answer: RecallView,
+  },
+  ({ params }, { user }) => closeRecall(user, idParam(params, 'id', 'This recall')),
+);

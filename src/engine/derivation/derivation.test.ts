@@ -1,6 +1,7 @@
 import { describe, expect, test } from 'vitest';
 import { beamOf, line, stepsOf } from '../../../tests/support/derivation-steps';
 import type { BeamDocument, Redundant } from '../model/index';
+import { joinedNumbers } from './index';
 
 /** The benchmark: L 6.0 m, a 1.8 m, w 5.517 kN/m, P 6.0 kN at the tip, EI 9963 kNm². */
 const [L, a, w, P] = [6, 1.8, 5517, 6000];
@@ -258,4 +259,11 @@ describe('letters', () => {
     expect(steps['compatibility']?.value).toBe(0);
     expect(steps['compatibility']?.note).toBeUndefined();
   });
+});
+
+test('numbers follow the symbols after an equals sign, but equations stand by themselves', () => {
+  expect(joinedNumbers({ numbers: '' })).toBe('');
+  expect(joinedNumbers({ numbers: '3' })).toBe('=3');
+  const equations = '\\begin{aligned}x&=1\\end{aligned}';
+  expect(joinedNumbers({ numbers: equations })).toBe(equations);
 });

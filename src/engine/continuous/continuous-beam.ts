@@ -9,7 +9,7 @@ import { factoriseRigid, solveRigid } from './rigid';
 import { measureSpan } from './span';
 import { SprungEquations } from './sprung';
 import { hangOverhangs } from './statics';
-import { readStations, SectionValues } from './stations';
+import { type Side, StationValues } from './stations';
 import { Sweep } from './sweep';
 
 /** Below this part of the length between two points a result need only be right to 1e-6, not 1e-9; as in engine/proof. */
@@ -39,7 +39,7 @@ export class ContinuousBeam {
   private readonly sweep = new Sweep();
   private readonly finder = new ExtremeFinder();
   private readonly proof = new FastProof();
-  private readonly sections: SectionValues[] = [];
+  private readonly values = new StationValues();
   private beam!: Beam;
   private loads: readonly Load[] = [];
   private moved = true;
@@ -81,18 +81,15 @@ export class ContinuousBeam {
   }
 
   /**
-   * V, M, θ and v at the ends of n equal steps, or at positions; at a point just right of it unless the left side is asked
-   * for. Of a longer answer before, more records may follow.
+   * V, M, θ and v at the ends of n − 1 equal steps, or at positions; at a point just right of it unless the left side is
+   * asked for.
    */
-  stations(at: number | ArrayLike<number> = 11, side: 'left' | 'right' = 'right'): readonly SectionValues[] {
-    const { sections, geometry } = this;
-    const count = typeof at === 'number' ? at : at.length;
-    while (sections.length < count) sections.push(new SectionValues());
-    const step = geometry.length / (count - 1);
-    for (let i = 0; i < count; i++) sections[i]!.x = typeof at === 'number' ? i * step : at[i]!;
-    if (typeof at === 'number') sections[count - 1]!.x = geometry.length;
-    readStations(geometry, sections, count, side);
-    return sections;
+  stations(at: number | ArrayLike<number> = 11, side: Side = 'right'): StationValues {
+    const { values, geometry } = this;
+    if (typeof at === 'number') values.placeEvenly(at, geometry.length);
+    else values.placeAt(at);
+    values.read(geometry, side);
+    return values;
   }
 
   /** Writes the reactions in the order of the document: N, up; N·m, anticlockwise on the beam. */

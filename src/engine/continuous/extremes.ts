@@ -6,6 +6,9 @@ const THIRD = 1 / 3; // a product is several times faster than a quotient
 const FIFTH = 1 / 5;
 const SIXTH = 1 / 6;
 
+/** Up to so many pieces it is not worth while to ask whether a piece may have an extreme before looking for it. */
+const FEW = 12;
+
 /** The largest and the smallest value of a quantity, each with one position where it is attained, m. */
 export class Range {
   max = NaN;
@@ -51,7 +54,7 @@ export class ExtremeFinder {
     this.searchPieces(geometry);
   }
 
-  /** Inside the pieces. θ and v are looked into only where cheap bounds leave room for a new extreme. */
+  /** Inside the pieces. Of many pieces few have an extreme, and bounds tell which of them have none. */
   private searchPieces({ piece, points, states }: Geometry): void {
     const last = points - 1;
     for (let k = 0; k < last; k++) {
@@ -59,21 +62,21 @@ export class ExtremeFinder {
       if (record.rate !== 0) {
         this.searchForces(record, states, 8 * k);
         this.searchVarying(record, states, 8 * k);
-      } else if (!this.isSettled(record, states, 8 * k)) this.searchUniform(record, states, 8 * k);
+      } else if (last <= FEW || !this.isSettled(record, states, 8 * k))
+        this.searchUniform(record, states, 8 * k);
     }
   }
 
   /**
-   * A piece whose load does not vary: takes in the crest of M, where V = 0; answers whether bounds show that θ and v have
-   * no new extreme inside. They hold under a downward load, where q = θ' is a parabola open below:
+   * Whether bounds show that a piece whose load does not vary has no new extreme of M, θ and v inside. They hold under a downward load, where q = θ' is a parabola open below:
    *
    * Next to an end where q < 0, q lies above the chord to its crest: up to its zero θ falls by q₀² a/(2(crest − q₀)) at
    * most. It lies below its tangent: a slope θ₀ > 0 with θ₀ · 2q'₀ ≤ q₀² is gone by 2θ₀/|q₀|, so that v rises by 2θ₀²/|q₀|
    * at most, and rises nowhere else. Where q > 0, v stays above the parabola of the largest q over its ends.
    */
   private isSettled(piece: Piece, states: Float64Array, i: number): boolean {
-    const { from, length: h, bending: b, shearing, start, curvature } = piece;
-    const { slope, deflection } = this;
+    const { length: h, bending: b, shearing, start, curvature } = piece;
+    const { moment, slope, deflection } = this;
     const kappa = curvature + shearing * start;
     const V = states[i]!;
     const M = states[i + 1]!;
@@ -87,7 +90,7 @@ export class ExtremeFinder {
     if (V * endV < 0) {
       const s = V / start;
       const crest = M + (V * s) / 2;
-      this.moment.add(crest, from + s);
+      if (crest > moment.max || crest < moment.min) return false;
       crestOfLeft = b * crest + kappa;
       crestOfRight = crestOfLeft;
       fromLeft = s;
@@ -126,31 +129,64 @@ export class ExtremeFinder {
     }
   }
 
-  /** θ where θ' = 0, and v where θ = 0, on a piece whose load does not vary. */
+  /** A piece whose load does not vary, the common case, in closed form: M and θ' are quadratic. */
   private searchUniform(piece: Piece, states: Float64Array, i: number): void {
-    const { length: h, bending: b, shearing, start, curvature } = piece;
-    const { theta, turns } = this;
-    const t1 = b * states[i + 1]! + curvature + shearing * start;
-    const t2 = (b * states[i]!) / 2;
+    const { from, length, bending: b, shearing, start, curvature } = piece;
+    const { moment, slope, deflection, turns, stretch } = this;
+    const V = states[i]!;
+    const M = states[i + 1]!;
+    if (V * states[i + 4]! < 0) moment.add(M + (V * V) / (2 * start), from + V / start);
+
+    const t0 = states[i + 2]!;
+    const t1 = b * M + curvature + shearing * start;
+    const t2 = (b * V) / 2;
     const t3 = b * start * -SIXTH;
-    theta[0] = states[i + 2]!;
-    theta[1] = t1;
-    theta[2] = t2;
-    theta[3] = t3;
-    theta[4] = 0;
     let count = 0;
     const discriminant = t2 * t2 - 3 * t1 * t3;
     if (discriminant > 0) {
-      // Half the coefficients of θ', so that no two nearly equal numbers are subtracted.
-      const q = t2 < 0 ? Math.sqrt(discriminant) - t2 : -t2 - Math.sqrt(discriminant);
+      const root = Math.sqrt(discriminant);
+      const q = t2 < 0 ? root - t2 : -t2 - root; // no difference of nearly equal numbers
       const one = t1 / q;
       const other = q / (3 * t3);
       const first = one < other ? one : other;
       const second = one < other ? other : one;
-      if (first > 0 && first < h) turns[count++] = first;
-      if (second > 0 && second < h) turns[count++] = second;
+      if (first > 0 && first < length) turns[count++] = first;
+      if (second > 0 && second < length) turns[count++] = second;
     }
-    this.addTurns(piece, states, i, count);
+
+    let s = 0;
+    let theta = t0;
+    let v = states[i + 3]!;
+    for (let n = 0; n <= count; n++) {
+      let to = length;
+      let next = states[i + 6]!;
+      let w = states[i + 7]!;
+      if (n < count) {
+        to = turns[n]!;
+        next = t0 + to * (t1 + to * (t2 + to * t3));
+        w = states[i + 3]! + to * (t0 + to * (t1 / 2 + to * (t2 * THIRD + (to * t3) / 4)));
+        if (next > slope.max || next < slope.min) slope.add(next, from + to);
+      }
+      const steep = v + theta * (to - s);
+      if (theta * next < 0 && (theta > 0 ? steep > deflection.max : steep < deflection.min)) {
+        const bound = v + (theta * (w - v - next * (to - s))) / (theta - next);
+        if (theta > 0 ? bound > deflection.max : bound < deflection.min) {
+          stretch[0] = s;
+          stretch[1] = to;
+          stretch[2] = theta;
+          stretch[3] = next;
+          this.theta[0] = t0;
+          this.theta[1] = t1;
+          this.theta[2] = t2;
+          this.theta[3] = t3;
+          this.theta[4] = 0;
+          this.addLevel(piece, states, i);
+        }
+      }
+      s = to;
+      theta = next;
+      v = w;
+    }
   }
 
   /** The same where the load varies: θ' is a cubic. */
@@ -210,14 +246,19 @@ export class ExtremeFinder {
           stretch[1] = to;
           stretch[2] = value;
           stretch[3] = next;
-          const level = monotoneZero(theta, stretch);
-          deflection.add(this.deflectionAt(states, i, level), from + level);
+          this.addLevel(piece, states, i);
         }
       }
       s = to;
       v = w;
       value = next;
     }
+  }
+
+  /** The deflection where θ = 0 in the stretch. */
+  private addLevel({ from }: Piece, states: Float64Array, i: number): void {
+    const level = monotoneZero(this.theta, this.stretch);
+    this.deflection.add(this.deflectionAt(states, i, level), from + level);
   }
 
   private deflectionAt(states: Float64Array, i: number, s: number): number {

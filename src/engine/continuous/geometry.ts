@@ -46,6 +46,7 @@ export class Geometry {
     const { piece } = this;
     let low = 0;
     let high = this.points - 1;
+    if (x === 0) return 0;
     if (x === this.length) return high;
     while (low < high) {
       const middle = (low + high) >> 1;

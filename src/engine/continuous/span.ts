@@ -77,15 +77,18 @@ export function releaseSpan(span: Span, piece: readonly Piece[], from: Support, 
   span.rightTurn = bend * (load + rise * (8 / 15)) * (1 / 24) + turn;
 }
 
+/**
+ * Several pieces: first as a cantilever from the left end, where nothing holds it; then the left reaction V₀ that brings
+ * the moment at the right end to 0 adds V₀ x, which is the moment V₀ · length at the right end.
+ */
 function releasePieces(
   span: Span,
   piece: readonly Piece[],
   { point: first, at }: Support,
   last: number,
 ): void {
-  const { inverse } = span;
-  setLeftReaction(span, piece, first, last);
-  let V = span.leftShear;
+  const { inverse, cross, far: ownFar } = span;
+  let V = 0;
   let M = 0;
   let near = 0;
   let far = 0;
@@ -96,38 +99,21 @@ function releasePieces(
       V -= force;
       M -= couple;
     }
-    const rise = rate * s;
+    const change = rate * s;
     const half = s / 2;
     const third = s * THIRD;
-    const bent = s * (curvature + b * (M + half * (V - third * (start + rise / 4))));
-    const lever =
-      half * s * (curvature + b * (M + 2 * third * (V - 1.5 * (s / 4) * (start + rise * (4 / 15)))));
+    const bent = s * (curvature + b * (M + half * (V - third * (start + change / 4))));
+    const lever = half * s * (curvature + b * (M + third * (2 * V - s * 0.75 * (start + change * (4 / 15)))));
     const part = ((from - at) * bent + lever) * inverse;
     far += part;
     near += bent - part;
-    const gain = s * (V - half * (start + rise * THIRD));
+    const gain = s * (V - half * (start + change * THIRD));
     slid += gain * shearing;
     M += gain;
-    V -= s * (start + rise / 2);
+    V -= s * (start + change / 2);
   }
-  span.rightShear = V;
-  span.leftTurn = near - slid * inverse;
-  span.rightTurn = far + slid * inverse;
-}
-
-/** The left reaction, by moments about the right end. */
-function setLeftReaction(span: Span, piece: readonly Piece[], first: number, last: number): void {
-  let V = 0;
-  let M = 0;
-  for (let k = first; k < last; k++) {
-    const { length: s, start, rate, force, couple } = piece[k]!;
-    if (k > first) {
-      V -= force;
-      M -= couple;
-    }
-    const rise = rate * s;
-    M += s * (V - (s / 2) * (start + rise * THIRD));
-    V -= s * (start + rise / 2);
-  }
-  span.leftShear = -M * span.inverse;
+  span.leftShear = -M * inverse;
+  span.rightShear = V - M * inverse;
+  span.leftTurn = near - slid * inverse - cross * M;
+  span.rightTurn = far + slid * inverse - ownFar * M;
 }

@@ -11,8 +11,10 @@ export class PlainBand {
 
   clear(size: number): void {
     this.size = size;
-    if (ROW * size > this.entries.length) this.entries = new Float64Array(2 * ROW * size);
-    else this.entries.fill(0, 0, ROW * size);
+    const end = ROW * size;
+    if (end > this.entries.length) this.entries = new Float64Array(2 * end);
+    const { entries } = this;
+    for (let i = 0; i < end; i++) entries[i] = 0;
   }
 
   /** Adds to the entry of rows i and j in either order; a row of −1 is none. */

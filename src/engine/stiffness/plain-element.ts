@@ -19,6 +19,8 @@ export class PlainElement {
   /** V, M, ψ and v just inside its ends. */
   readonly left = new Float64Array(4);
   readonly right = new Float64Array(4);
+  private inverse = NaN; // 1/h
+  private scale = NaN; // 1/(1 + Φ)
   private readonly shape = new Float64Array(4);
 
   measure(from: number, to: number, ei: number, ga: number | null): void {
@@ -27,11 +29,17 @@ export class PlainElement {
     this.length = h;
     this.ei = ei;
     this.phi = ga === null ? 0 : (12 * ei) / (ga * h * h);
-    const unit = ei / ((1 + this.phi) * h * h * h);
+    this.inverse = 1 / h;
+    this.scale = 1 / (1 + this.phi);
+    const unit = ei * this.scale * this.inverse * this.inverse * this.inverse;
     this.twelve = 12 * unit;
     this.six = 6 * unit * h;
     this.near = (4 + this.phi) * unit * h * h;
     this.far = (2 - this.phi) * unit * h * h;
+  }
+
+  unload(): void {
+    for (let i = 0; i < 4; i++) this.held[i] = 0;
   }
 
   /** A downward load p at s from its left end. */
@@ -56,12 +64,12 @@ export class PlainElement {
 
   /** V, M, ψ and v inside its ends from the movements of its nodes, at 2n and 2n + 1. */
   respond(movement: Float64Array, n: number): void {
-    const { held, left, right, six, near, far, length } = this;
+    const { held, left, right, six, near, far, inverse } = this;
     const v = movement[n]!;
     const psi = movement[n + 1]!;
     const w = movement[n + 2]!;
     const phi = movement[n + 3]!;
-    const chord = (w - v) / length;
+    const chord = (w - v) * inverse;
     const turn = psi - chord;
     const turnFar = phi - chord;
     const shear = six * (turn + turnFar);
@@ -77,10 +85,9 @@ export class PlainElement {
 
   /** v at s for a unit of each end movement. */
   private deflectAt(s: number): void {
-    const { shape, phi, length: h } = this;
-    const x = s / h;
+    const { shape, phi, length: h, scale } = this;
+    const x = s * this.inverse;
     const y = 1 - x;
-    const scale = 1 / (1 + phi);
     shape[0] = scale * (y * y * (1 + 2 * x) + phi * y);
     shape[1] = scale * h * x * y * (y + phi / 2);
     shape[2] = scale * (x * x * (1 + 2 * y) + phi * x);
@@ -89,11 +96,10 @@ export class PlainElement {
 
   /** ψ at s for a unit of each end movement. */
   private turnAt(s: number): void {
-    const { shape, phi, length: h } = this;
-    const x = s / h;
+    const { shape, phi, scale, inverse } = this;
+    const x = s * inverse;
     const y = 1 - x;
-    const scale = 1 / (1 + phi);
-    shape[0] = (-6 * scale * x * y) / h;
+    shape[0] = -6 * scale * x * y * inverse;
     shape[1] = scale * y * (1 - 3 * x + phi);
     shape[2] = -shape[0]!;
     shape[3] = scale * x * (1 - 3 * y + phi);

@@ -48,9 +48,11 @@ export class PlainStiffness {
   /** The beam under the loads, all of its own unless given; `moved: false` leaves the supports where they are. */
   solve(loads: readonly Load[] = this.beam.loads, moved = true): void {
     const { element, elements, applied, movement } = this;
-    for (let e = 0; e < elements; e++) element[e]!.held.fill(0);
-    applied.fill(0, 0, 2 * elements + 2);
-    movement.fill(0, 0, 2 * elements + 2);
+    for (let e = 0; e < elements; e++) element[e]!.unload();
+    for (let i = 0; i < 2 * elements + 2; i++) {
+      applied[i] = 0;
+      movement[i] = 0;
+    }
     for (let i = 0; i < loads.length; i++) this.addLoad(loads[i]!);
     if (moved) this.prescribe(this.beam);
     this.balance(moved);
@@ -77,7 +79,7 @@ export class PlainStiffness {
 
   private number({ supports }: Beam): void {
     const { row, node, elements } = this;
-    row.fill(0, 0, 2 * elements + 2);
+    for (let i = 0; i < 2 * elements + 2; i++) row[i] = 0;
     for (let i = 0; i < supports.length; i++) {
       const { at, vertical, rotation } = supports[i]!;
       const n = this.nodeFrom(at);
@@ -243,7 +245,7 @@ function insert(x: Float64Array, count: number, position: number): number {
   let i = count;
   while (i > 0 && x[i - 1]! > position) i--;
   if (i > 0 && x[i - 1] === position) return count;
-  x.copyWithin(i + 1, i, count);
+  for (let j = count; j > i; j--) x[j] = x[j - 1]!;
   x[i] = position;
   return count + 1;
 }

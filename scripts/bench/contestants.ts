@@ -1,0 +1,65 @@
+import { solveBeam } from '@/engine/beam/index';
+import { ContinuousBeam } from '@/engine/continuous/index';
+import type { Beam } from '@/engine/model/index';
+import { VARIANTS } from './cases';
+import { STATIONS } from './frame';
+import type { Contestant } from './measure';
+import { mathjs, mlMatrix, type Peer } from './peers';
+
+/** Elements per span of the finer peers. */
+const FINE = 50;
+
+/**
+ * Every contestant takes each beam anew: its geometry, its loads, the reactions, and V, M, θ and v at eleven stations.
+ * ml-matrix is raced before anything of mathjs has run, so that the code they share is compiled for it alone.
+ */
+export const fast = (beams: readonly Beam[]): Contestant => ({
+  name: 'Putlog, exact extremes',
+  run: ours(beams, false),
+});
+
+export const checked = (beams: readonly Beam[]): Contestant => ({
+  name: 'Putlog, exact extremes and the check',
+  run: ours(beams, true),
+});
+
+export const peer = (beams: readonly Beam[]): Contestant => ({
+  name: 'ml-matrix, one element per segment',
+  run: theirs(beams, mlMatrix(beams[0]!, 0)),
+});
+
+export const finePeer = (beams: readonly Beam[]): Contestant => ({
+  name: `ml-matrix, ${FINE} elements per span`,
+  run: theirs(beams, mlMatrix(beams[0]!, FINE)),
+});
+
+export const others = (beams: readonly Beam[]): Contestant[] => [
+  { name: 'mathjs, one element per segment', run: theirs(beams, mathjs(beams[0]!, 0)) },
+  { name: `mathjs, ${FINE} elements per span`, run: theirs(beams, mathjs(beams[0]!, FINE)) },
+  {
+    name: 'Putlog, the solver of 32 digits',
+    run: (k) => {
+      solveBeam(beams[k % VARIANTS]!);
+    },
+  },
+];
+
+function ours(beams: readonly Beam[], check: boolean): (k: number) => void {
+  const solver = new ContinuousBeam();
+  const vertical = new Float64Array(beams[0]!.supports.length);
+  const moment = new Float64Array(beams[0]!.supports.length);
+  return (k) => {
+    if (!solver.take(beams[k % VARIANTS]!)) throw new Error('a beam of the bench is no continuous one');
+    solver.solve();
+    solver.readReactions(vertical, moment);
+    solver.extremes();
+    solver.stations(STATIONS);
+    if (check && !solver.isProven()) throw new Error('a beam of the bench is not proven');
+  };
+}
+
+const theirs =
+  (beams: readonly Beam[], solve: Peer): ((k: number) => void) =>
+  (k) => {
+    solve(beams[k % VARIANTS]!);
+  };

@@ -35,7 +35,7 @@ const UNSEEN_MS = 400;
 /** The value while the element is in view, or is printed; out of view it follows later, when the hand has long rested. */
 export function useInSight<T>(element: RefObject<Element | null>, value: T): T {
   const isSeen = useSeen(element);
-  const [late, setLate] = useState(value);
+  const [late, setLate] = useState(() => value);
   useEffect(() => {
     if (isSeen) return setLate(() => value);
     const timer = setTimeout(() => startTransition(() => setLate(() => value)), UNSEEN_MS);

@@ -1,4 +1,5 @@
 import { type KeyboardEvent, type PointerEvent, useRef } from 'react';
+import { flushSync } from 'react-dom';
 import { formatQuantity } from '@/engine/quantity';
 import { nudge, placeInRange, type QuantityRange, snapToStep, valueAtPlace } from './range';
 
@@ -22,7 +23,9 @@ export function RangeLine({ range, ends, value, unit, label, onChange }: RangeLi
   const drag = (event: PointerEvent) => {
     const box = line.current?.getBoundingClientRect();
     if (!box || box.width === 0) return;
-    onChange(snapToStep(valueAtPlace((event.clientX - box.left) / box.width, range), range, unit));
+    const to = snapToStep(valueAtPlace((event.clientX - box.left) / box.width, range), range, unit);
+    // In this frame: what is only scheduled would be painted with the next one.
+    if (to !== value) flushSync(() => onChange(to));
   };
   const onKeyDown = (event: KeyboardEvent) => {
     const moved = keyedValue(event, shown, range, unit);

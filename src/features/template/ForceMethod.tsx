@@ -9,7 +9,7 @@ import type { Instance } from '@/engine/template';
 import { Derivation, type Worked } from './Derivation';
 import { RedundantChoice } from './RedundantChoice';
 import { type Release, releaseKey, toRedundant, toRelease } from './release';
-import { useLater, useNear, useRestedValue } from './use-live';
+import { useInSight, useLater, useNear, useRestedValue } from './use-live';
 import type { WorkedSteps } from './worked';
 
 /** A beam that was solved, with the letters of its template. */
@@ -55,9 +55,12 @@ export const ForceMethod = memo(function ForceMethod({
   const { beam, solution } = solved;
   const redundants = useMemo(() => redundantsOf(solved, releases), [solved, releases]);
   // The worked steps come first; the pictures follow them.
-  const pictured = useRestedValue(
-    useMemo(() => ({ beam, solution, redundants }), [beam, solution, redundants]),
-    PICTURES_MS,
+  const pictured = useInSight(
+    host,
+    useRestedValue(
+      useMemo(() => ({ beam, solution, redundants }), [beam, solution, redundants]),
+      PICTURES_MS,
+    ),
   );
   const worked = useMemo(
     () => kit && work(kit, solved, redundants, system),

@@ -1,4 +1,4 @@
-import { memo } from 'react';
+import { memo, useRef } from 'react';
 import type { BlockAction } from '@/components/ui/BlockActions';
 import { TitleBlock } from '@/components/ui/TitleBlock';
 import { TitleStrip } from '@/components/ui/TitleStrip';
@@ -19,7 +19,7 @@ import { dayText, type TemplatePageData } from './page';
 import { entryText } from './raw';
 import { ClosedForms, Notes, ProofCases, proofNote, Validity, Zone } from './SheetZones';
 import { StiffnessFields } from './StiffnessFields';
-import { useRestedValue } from './use-live';
+import { useInSight, useRestedValue } from './use-live';
 import { useTemplatePage } from './use-template-page';
 
 /** A template's page: its values, the beam that follows from them, and how it is worked. */
@@ -176,10 +176,12 @@ interface RulesProps {
 /** What is said of the values. */
 const RulesAndForms = memo(function RulesAndForms({ data, rested, note, axial }: RulesProps) {
   const { template, system, formulas } = data;
-  const rules = toRuleLines(template, rested.rules, system);
-  const results = toResultLines(template, rested.instance, system);
+  const place = useRef<HTMLDivElement>(null);
+  const seen = useInSight(place, rested);
+  const rules = toRuleLines(template, seen.rules, system);
+  const results = toResultLines(template, seen.instance, system);
   return (
-    <div className="min-w-0 border-ink max-md:border-t lg:border-l">
+    <div ref={place} className="min-w-0 border-ink max-md:border-t lg:border-l">
       <Zone letter="E" title="Validity" note={note}>
         <Validity rules={rules} formulas={formulas} />
         <AxialRule axial={axial} />

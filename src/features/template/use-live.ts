@@ -50,9 +50,7 @@ function useSeen(element: RefObject<Element | null>): boolean {
   useEffect(() => {
     const { current } = element;
     if (!current) return;
-    const observer = new IntersectionObserver(([entry]) => entry && setInView(entry.isIntersecting), {
-      rootMargin: '100px',
-    });
+    const observer = new IntersectionObserver(([entry]) => entry && setInView(entry.isIntersecting));
     observer.observe(current);
     const print = () => flushSync(() => setPrinted(true));
     const printed = () => setPrinted(false);

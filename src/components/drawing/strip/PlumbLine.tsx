@@ -1,4 +1,5 @@
 import { type KeyboardEvent, type PointerEvent, useMemo } from 'react';
+import { flushSync } from 'react-dom';
 import { type DrawingFormat, figure } from '../format';
 import { textWidth } from '../geometry/text-width';
 import { ticksPath } from '../marks/paths';
@@ -102,7 +103,9 @@ function Rings({ frame, format, layout, x }: Pick<Props, 'frame' | 'format' | 'l
 /** Dragging and keys; the drawing's place on the page is read in the event, never while rendering. */
 function handlersOf({ frame, format, x, onMove }: Props) {
   const toMetres = (px: number) => (px - frame.x0) / frame.perMetre;
-  const drag = (event: PointerEvent<SVGElement>) => onMove(stationAt(event, toMetres, frame.width));
+  // In this frame: what is only scheduled would be painted with the next one.
+  const drag = (event: PointerEvent<SVGElement>) =>
+    flushSync(() => onMove(stationAt(event, toMetres, frame.width)));
   return {
     onPointerDown(event: PointerEvent<SVGElement>) {
       event.currentTarget.setPointerCapture(event.pointerId);

@@ -11,6 +11,7 @@ export const paths = {
     `/templates/${encodeURIComponent(slug)}/revisions/${number}`,
   templateDraft: (slug: string, number: number) => `/templates/${encodeURIComponent(slug)}/drafts/${number}`,
   library: '/library',
+  libraryDocument: (kind: string, slug: string) => `/library/${kind}/${encodeURIComponent(slug)}`,
   /** Where a revision of any kind of document is reviewed. */
   review: (kind: string, slug: string, number: number) =>
     `/library/${kind}/${encodeURIComponent(slug)}/revisions/${number}`,

@@ -51,12 +51,20 @@ const templateDocument = (slug: string, change: object): Document => {
 export const draftTemplate = (author: Member, slug: string, change: object = {}): Promise<DraftKey> =>
   draft(author, templateDocument(slug, change), 'First issue.');
 
+interface Issued {
+  readonly change?: object;
+  readonly note?: string;
+  /** Under another address than its own. */
+  readonly slug?: string;
+}
+
 /** The same, issued. */
 export const issueTemplate = async (
   pair: Pair,
   slug: string,
-  { change = {}, note = 'First issue.' }: { change?: object; note?: string } = {},
-): Promise<DraftKey> => issue(pair, await draft(pair.author, templateDocument(slug, change), note));
+  { change = {}, note = 'First issue.', slug: as = slug }: Issued = {},
+): Promise<DraftKey> =>
+  issue(pair, await draft(pair.author, { ...templateDocument(slug, change), slug: as }, note));
 
 /** A shipped section table, issued. */
 export async function issueSections(pair: Pair, slug: string): Promise<DraftKey> {

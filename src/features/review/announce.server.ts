@@ -1,10 +1,12 @@
 import { and, eq } from 'drizzle-orm';
 import type { Tx } from '@/db/client';
+import { revision } from '@/db/schema/library';
 import { watch } from '@/db/schema/review';
 import { tell } from '@/features/notice/notice.server';
 import { paths } from '@/paths';
 import { peopleWith } from './people.server';
-import { type Actor, nameOfRevision, type RevisionRow } from './rows.server';
+import { type Actor, nameOfRevision, type RevisionRow, selectRevisions } from './rows.server';
+import { derivedFrom } from './uses.server';
 
 export type Announced =
   | { readonly step: 'submit' | 'issue' }
@@ -29,6 +31,31 @@ export async function announce(
     dedupe: `${request.step} ${row.id} ${occasion}`.trim(),
     mailData: { reference: row.of.reference, facts: [{ label: 'Document', value: row.of.name }] },
   });
+}
+
+/** Tells those who wrote or watch a document that was made from what is withdrawn, or goes back to it. */
+export async function announceToDerived(
+  tx: Tx,
+  actor: Actor,
+  row: RevisionRow,
+  reason: string,
+): Promise<void> {
+  const { practiceId } = actor;
+  for (const one of await derivedFrom(tx, practiceId, row.id)) {
+    const revisions = await selectRevisions(tx, practiceId, eq(revision.documentId, one.documentId));
+    const authors = revisions.flatMap(({ authorId, editorIds }) => [authorId, ...editorIds]);
+    await tell(tx, actor, {
+      people: [...authors, ...(await watchersOf(tx, practiceId, one.documentId))].filter(
+        (person) => person !== actor.personId,
+      ),
+      kind: 'withdrawn',
+      title: `${one.reference} was made from ${nameOfRevision(row)}, which is withdrawn`,
+      detail: reason,
+      href: paths.libraryDocument(one.kind, one.slug),
+      dedupe: `withdraw ${row.id} ${one.documentId}`,
+      mailData: { reference: one.reference },
+    });
+  }
 }
 
 /** The librarians who may review it; where there is none but its authors, the checkers. */

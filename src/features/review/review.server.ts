@@ -7,7 +7,7 @@ import { requirePermission } from '@/features/account/permission';
 import { recordAudit } from '@/features/audit/audit.server';
 import { AppError, type Fault, invalid } from '@/lib/app-error';
 import { fingerprint } from '@/lib/fingerprint';
-import { announce } from './announce.server';
+import { announce, announceToDerived } from './announce.server';
 import { insertComment, openComments } from './comment.server';
 import type { RevisionKey } from './draft';
 import { unfinishedOf } from './draft';
@@ -135,6 +135,7 @@ async function step(
   const moved = await move(tx, actor, current, request);
   const effect = await followUp(tx, actor, current, request);
   if (!quietly) await announce(tx, actor, current, request, effect.dedupe);
+  if (request.step === 'withdraw') await announceToDerived(tx, actor, current, request.reason);
   await recordAudit(tx, actor, {
     action: `revision.${request.step}`,
     subjectKind: 'revision',

@@ -19,7 +19,7 @@ export async function readJson<S extends z.ZodType>(holder: Holder, schema: S): 
   return reading.value;
 }
 
-/** The body as JSON, also where its type is not said: neither too deep nor with a key that means a prototype. */
+/** The body as JSON, also where its type is not said: neither too deep nor with what cannot be kept. */
 async function readBody({ request }: Holder): Promise<unknown> {
   const type = request.headers.get('content-type')?.split(';', 1)[0]?.trim().toLowerCase() ?? '';
   if (type !== '' && type !== 'application/json' && !/^application\/[\w.-]+\+json$/.test(type))
@@ -29,8 +29,8 @@ async function readBody({ request }: Holder): Promise<unknown> {
   const text = decode(await readBytes(request));
   if (isTooDeep(text)) throw invalid([TOO_DEEP]);
   const value = parse(text);
-  const path = prototypeKey(value);
-  if (path) throw invalid([prototypeFault(path)]);
+  const fault = unkeepable(value);
+  if (fault) throw invalid([fault]);
   return value;
 }
 
@@ -115,16 +115,29 @@ function isTooDeep(text: string): boolean {
   return false;
 }
 
-/** Where a key would mean an object's prototype to whoever copies it; null when nowhere. */
-function prototypeKey(value: unknown): string[] | null {
+/**
+ * The first place where a key would mean an object's prototype to whoever copies it, or where a text cannot be kept:
+ * PostgreSQL takes no NUL and no half of a surrogate pair. Null when there is none.
+ */
+function unkeepable(value: unknown, path: readonly string[] = []): Fault | null {
+  if (typeof value === 'string') return isKept(value) ? null : badText(path);
   if (typeof value !== 'object' || value === null) return null;
   for (const [key, inner] of Object.entries(value)) {
-    if (key === '__proto__') return [key];
-    const path = prototypeKey(inner);
-    if (path) return [key, ...path];
+    const here = [...path, key];
+    if (key === '__proto__') return prototypeFault(here);
+    const fault = isKept(key) ? unkeepable(inner, here) : badText(here);
+    if (fault) return fault;
   }
   return null;
 }
+
+const isKept = (text: string): boolean => !text.includes('\0') && !/\p{Surrogate}/u.test(text);
+
+const badText = (path: readonly string[]): Fault => ({
+  pointer: pointer(path),
+  code: 'bad_text',
+  message: 'This holds a character that is no text: a NUL, or half of a surrogate pair. Remove it.',
+});
 
 const prototypeFault = (path: readonly string[]): Fault => ({
   pointer: pointer(path),

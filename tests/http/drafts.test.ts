@@ -178,6 +178,18 @@ describe('saving', () => {
     expect(bad.json.sha256).not.toBe(good.json.sha256);
   });
 
+  test('text that no database keeps is refused at its place, and nothing is lost', async () => {
+    await begin('nul', { document: { name: 'Beam' } });
+    const at = async (document: object) => {
+      const refused = await save('nul', 1, 1, { document });
+      return [refused.status, ...faults(refused)];
+    };
+    expect(await at({ name: 'a\u0000b' })).toEqual([422, '/document/name bad_text']);
+    expect(await at({ tags: ['fine', 'half \ud83d'] })).toEqual([422, '/document/tags/1 bad_text']);
+    expect(await at({ '\u0000': 1 })).toEqual([422, '/document/\u0000 bad_text']);
+    expect((await save('nul', 1, 1, { document: { name: 'whole 😀' } })).status).toBe(200);
+  });
+
   test('over a version that somebody else saved is told what stands there now', async () => {
     await begin('merged', { document: named('merged') });
     await save('merged', 1, 1, { document: named('merged', { summary: 'Said by the other.' }) }, 'other');

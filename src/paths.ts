@@ -30,6 +30,7 @@ export const paths = {
     `/jobs/${encodeURIComponent(number)}/members/${encodeURIComponent(mark)}`,
   memberSheet: (number: string, mark: string) =>
     `/jobs/${encodeURIComponent(number)}/members/${encodeURIComponent(mark)}/sheet`,
+  audit: '/audit',
   help: '/help',
   helpPage: (page: string) => `/help/${encodeURIComponent(page)}`,
   healthz: '/healthz',
@@ -52,6 +53,8 @@ export const paths = {
     recall: (id: string) => `/api/v1/recalls/${encodeURIComponent(id)}`,
     requests: '/api/v1/requests',
     request: (number: number) => `/api/v1/requests/${number}`,
+    audit: '/api/v1/audit',
+    auditExport: '/api/v1/audit/export',
     sections: '/api/v1/sections',
     jobs: '/api/v1/jobs',
     job: (number: string) => `/api/v1/jobs/${encodeURIComponent(number)}`,

@@ -55,7 +55,7 @@ export async function ask(method: string, path: string, given: Ask = {}): Promis
   );
   if (!response) throw new Error('The middleware answers every request');
   const text = await response.text();
-  const isJson = response.headers.get('content-type')?.includes('json');
+  const isJson = /json(;|$)/.test(response.headers.get('content-type') ?? '');
   return {
     status: response.status,
     headers: response.headers,

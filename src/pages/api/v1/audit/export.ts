@@ -1,0 +1,25 @@
+import { z } from 'zod';
+import { recordQuery } from '@/features/audit/record';
+import { EXPORT_FORMATS, exportRecord } from '@/features/audit/record.server';
+import { endpoint } from '@/http/endpoint';
+
+const TYPES = { csv: 'text/csv; charset=utf-8', jsonl: 'application/jsonl; charset=utf-8' } as const;
+
+export const GET = endpoint(
+  {
+    summary: 'The record of events as a file, oldest first',
+    description:
+      'csv is a table to read. jsonl holds every row whole, each with its hash and the hash before it: SHA-256 of the row without its hash, as canonical JSON (RFC 8785).',
+    query: z.strictObject({ ...recordQuery, format: z.enum(EXPORT_FORMATS).default('csv') }),
+  },
+  async (_, { user, query: { format, ...query } }) => {
+    const pieces = await exportRecord(user, query, format);
+    return new Response(ReadableStream.from(pieces).pipeThrough(new TextEncoderStream()), {
+      headers: {
+        'Content-Type': TYPES[format],
+        'Content-Disposition': `attachment; filename="record-of-events.${format}"`,
+        'Cache-Control': 'no-store',
+      },
+    });
+  },
+);

@@ -2,6 +2,7 @@ import { closeConnection } from '@/db/client';
 import { sweepSignIns } from '@/features/account/sweep.server';
 import { BEAT, beat } from '@/features/admin/health.server';
 import { verifyAllChains } from '@/features/audit/audit.server';
+import { keepSending, readMailing } from '@/features/notice/mailer.server';
 import { log } from '@/lib/log';
 import { type Queue, type Task, workQueue } from '@/services/queue';
 
@@ -22,6 +23,8 @@ async function work(): Promise<Queue> {
   const url = process.env['DATABASE_URL'];
   if (!url)
     throw new Error('DATABASE_URL is not set: give the connection of the role that web and worker share');
+  const mailing = readMailing(process.env);
+  if (!mailing) log.info('no mail is sent: PUTLOG_SMTP_URL is not set');
   const startedAt = new Date();
   const queue = await workQueue(url, handlers, (error) => log.error('queue', { error }));
   await beat(startedAt);
@@ -29,11 +32,12 @@ async function work(): Promise<Queue> {
     () => beat(startedAt).catch((error: unknown) => log.error('no sign of life given', { error })),
     BEAT.every * 1000,
   );
+  const mailer = mailing && keepSending(mailing);
   process.send?.('ready');
   return {
     stop: async () => {
       clearInterval(pulse);
-      await queue.stop();
+      await Promise.all([queue.stop(), mailer?.stop()]);
       await closeConnection();
     },
   };

@@ -132,7 +132,7 @@ export function oriented(a: Expression, value: (name: string) => number): Expres
       const rest = turned.filter((monomial) => monomial.coefficient.n < 0);
       return factorOf([...positive, ...rest], factor.power);
     });
-    return termOf(coefficient, term.powers, factors);
+    return termOf(coefficient, term.powers, joined(factors));
   });
 }
 
@@ -165,14 +165,19 @@ function asTerm(a: Expression): Term | null {
 function multiplyTerms(a: Term, b: Term): Term {
   const powers = new Map(a.powers);
   for (const [name, p] of b.powers) powers.set(name, (powers.get(name) ?? 0) + p);
-  const factors = [...a.factors];
-  for (const factor of b.factors) {
-    const at = factors.findIndex((other) => other.key === factor.key);
-    if (at < 0) factors.push(factor);
-    else factors[at] = { ...factor, power: factors[at]!.power + factor.power };
+  const factors = joined([...a.factors, ...b.factors]);
+  return termOf(product(a.coefficient, b.coefficient), nonZero(powers), factors);
+}
+
+/** Factors of one sum as one, with their powers added; what cancels is left out. */
+function joined(factors: readonly Factor[]): Factor[] {
+  const found: Factor[] = [];
+  for (const factor of factors) {
+    const at = found.findIndex((other) => other.key === factor.key);
+    if (at < 0) found.push(factor);
+    else found[at] = { ...factor, power: found[at]!.power + factor.power };
   }
-  const left = factors.filter((factor) => factor.power !== 0);
-  return termOf(product(a.coefficient, b.coefficient), nonZero(powers), left);
+  return found.filter((factor) => factor.power !== 0);
 }
 
 const plain = ({ coefficient, powers }: Monomial): Term => termOf(coefficient, powers, []);

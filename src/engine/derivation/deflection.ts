@@ -3,7 +3,15 @@ import { type Extreme, evaluate, extremes, type Piecewise, piecewise } from '../
 import { chartedDeflection } from './charted';
 import { placeWords } from './display';
 import { finalDeflection } from './final';
-import { addUpTo, type Found, fromChart, fromWork, type MovementPart, movementSteps } from './movement';
+import {
+  addUpTo,
+  type Found,
+  fromChart,
+  fromWork,
+  type MovementPart,
+  movementSteps,
+  together,
+} from './movement';
 import type { NamedBeam } from './named-beam';
 import { type Piece, piecesOf } from './pieces';
 import { isHalfway, placeOf } from './spot';
@@ -103,7 +111,7 @@ function chartedParts(beam: NamedBeam, pieces: readonly Piece[], x: number, plac
   const piece = pieces.find(({ from, to }) => from <= x && x <= to)!;
   const parts = [...chartedDeflection(beam, piece, place).values()];
   if (!parts.every((part) => part !== null)) return null;
-  return { parts: parts.map((part) => fromChart(beam.letters, part)), how: '' };
+  return { parts: together(parts.map((part) => fromChart(beam.letters, part))), how: '' };
 }
 
 /** The work of the moments on those of a unit load: of the released beam, on which it does no work at the redundants. */

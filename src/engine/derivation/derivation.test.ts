@@ -186,7 +186,7 @@ describe('letters', () => {
     expect(steps['given']?.note).toBe(
       'Worked in kN and m. Here a is measured from the support at its left, or from the left end.',
     );
-    expect(steps['gap-A-P1']?.title).toBe('Slope at A under P₁');
+    expect(steps['gap-A-P1']?.title).toBe('Slope at A under P_{1}');
   });
 
   test('a load that is split between groups is one load of the derivation', () => {

@@ -16,7 +16,7 @@ import {
 } from '../chart/index';
 import { evaluate } from '../polynomial/index';
 import type { Cause } from './charted';
-import { fromChart, type MovementPart } from './movement';
+import { fromChart, type MovementPart, together } from './movement';
 import { type NamedBeam, type NamedSupport, settlementOf, springOf, turningOf } from './named-beam';
 import { partOn, stiffnessBetween } from './pieces';
 import { supportMomentTex } from './reactions';
@@ -113,17 +113,6 @@ function seenCantilever({ beam }: Worked): Seen | null {
     moments,
     movements: { rises: [rise, []], rotation: turningOf(root) ?? [] },
   };
-}
-
-/** Up to so many terms are read at once; more, part by part. */
-const AT_ONCE = 3;
-
-function together(parts: readonly MovementPart[]): MovementPart[] {
-  const charted = parts.filter((part) => 'expression' in part);
-  const expression = charted.flatMap((part) => part.expression);
-  if (expression.length === 0 || expression.length > AT_ONCE) return [...parts];
-  const value = charted.reduce((sum, part) => sum + part.value, 0);
-  return [{ cause: { kind: 'loads' }, value, expression, terms: charted.flatMap(({ terms }) => terms) }];
 }
 
 /** Between the supports on either side; at the ends of the beam with the overhang there. */

@@ -51,6 +51,19 @@ export function addUpTo(letters: Letters, parts: readonly MovementPart[], value:
   return Math.abs(total - value) <= SAME * Math.max(Math.abs(value), ...sizes);
 }
 
+/** Up to so many terms are read at once. */
+const AT_ONCE = 3;
+
+/** Closed forms of few terms as one part; others, and more, part by part. */
+export function together(parts: readonly MovementPart[]): MovementPart[] {
+  const charted = parts.filter((part) => 'expression' in part);
+  const expression = charted.flatMap((part) => part.expression);
+  const isFew = expression.length > 0 && expression.length <= AT_ONCE;
+  if (!isFew || charted.length < parts.length) return [...parts];
+  const value = charted.reduce((sum, part) => sum + part.value, 0);
+  return [{ cause: { kind: 'loads' }, value, expression, terms: charted.flatMap(({ terms }) => terms) }];
+}
+
 /** Where a movement is found, without its parts. */
 export type Found = Pick<Frame, 'id' | 'left' | 'kind' | 'extra'> & {
   title: string;

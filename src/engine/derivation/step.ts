@@ -113,7 +113,8 @@ export function withResult(
   const isNothing = !/[1-9]/.test(result.replace(/\\mathrm.*$/, ''));
   const isDone =
     numbers === '' || numbers === result || isNothing || units.of(kind, scale) === units.shown(kind);
-  if (isPlain(numbers) && !isNothing) return `${numbers}\\,${unitTex(units.of(kind, scale))}`;
+  if (isPlain(numbers) && !isNothing && units.of(kind, scale) !== units.shown(kind))
+    return `${numbers}\\,${unitTex(units.of(kind, scale))}`;
   return isDone ? numbers : `${numbers}=${result}`;
 }
 

@@ -129,20 +129,17 @@ function loadSteps(
 }
 
 /** The moments over the outermost supports where the beam overhangs them; statics alone finds them. */
-function outerMoments({ beam, parts }: Worked, spans: readonly Span[]): DerivationStep[] {
-  const ends = [
-    { support: spans[0]!.left, side: 'left' as const, isEnd: spans[0]!.left.x === 0 },
-    {
-      support: spans.at(-1)!.right,
-      side: 'right' as const,
-      isEnd: spans.at(-1)!.right.x === beam.beam.length,
-    },
-  ];
-  return ends.flatMap(({ support, side, isEnd }) => {
-    if (isEnd) return [];
-    const moment = momentAt(beam, parts, support, side);
-    return moment.length === 0 ? [] : [supportMoment(beam, support, moment)];
+function outerMoments(worked: Worked, spans: readonly Span[]): DerivationStep[] {
+  return [spans[0]!.left, spans.at(-1)!.right].flatMap((support) => {
+    const moment = outerMoment(worked, spans, support);
+    return moment.length === 0 ? [] : [supportMoment(worked.beam, support, moment)];
   });
+}
+
+/** Of what overhangs an outermost support; nothing where the beam ends there. */
+function outerMoment({ beam, parts }: Worked, spans: readonly Span[], support: NamedSupport): Expression {
+  if (support.x === 0 || support.x === beam.beam.length) return [];
+  return momentAt(beam, parts, support, support === spans[0]!.left ? 'left' : 'right');
 }
 
 function equations(
@@ -164,18 +161,19 @@ function equations(
 /** M_A L₁ + 2M_B(L₁ + L₂) + M_C L₂ = right, over the support between spans k and k + 1. */
 type Row = {
   /** The support moments with what multiplies them. */
-  left: { tex: string; factor: Expression; isKnown: boolean }[];
+  left: { tex: string; factor: Expression; isKnown: boolean; moment: Expression }[];
   right: Expression;
-  /** The same with the load terms' closed forms. */
+  /** The same, and the moments that are known, with the closed forms of the loads. */
   closed: Expression;
 };
 
 function rowOf(
-  { beam, unknowns }: Worked,
+  worked: Worked,
   spans: readonly Span[],
   loads: readonly (readonly [LoadTerm, LoadTerm])[],
   k: number,
 ): Row {
+  const { beam, unknowns } = worked;
   const [before, after] = [spans[k]!, spans[k + 1]!];
   const tex = (support: NamedSupport) => supportMomentTex(support);
   const isUnknown = (support: NamedSupport) => unknowns.some(({ x }) => x === support.x);
@@ -186,7 +184,15 @@ function rowOf(
     { support: after.right, factor: after.length },
   ]
     .filter(({ support }) => beam.letters.has(tex(support)))
-    .map(({ support, factor }) => ({ tex: tex(support), factor, isKnown: !isUnknown(support) }));
+    .map(({ support, factor }) => {
+      const isKnown = !isUnknown(support);
+      return {
+        tex: tex(support),
+        factor,
+        isKnown,
+        moment: isKnown ? outerMoment(worked, spans, support) : [],
+      };
+    });
   const terms = [loads[k]![1], loads[k + 1]![0]].filter(({ value }) => value.length > 0);
   const settled = settlements(before, after);
   const known = left.filter(({ isKnown }) => isKnown);
@@ -196,7 +202,7 @@ function rowOf(
     closed: simplest([
       ...terms.flatMap(({ value }) => negate(value)),
       ...settled,
-      ...known.flatMap(({ tex: moment, factor }) => negate(multiply(symbol(moment), factor))),
+      ...known.flatMap(({ moment, factor }) => negate(multiply(moment, factor))),
     ]),
   };
 }

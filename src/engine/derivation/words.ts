@@ -110,14 +110,21 @@ export function causeTex(cause: Cause | { kind: 'curvature' }): string {
   }
 }
 
-/** A letter in running text: P₁, "own weight". */
+const GREEK: Readonly<Record<string, string>> = {
+  kappa: 'κ',
+  alpha: 'α',
+  beta: 'β',
+  theta: 'θ',
+  varphi: 'φ',
+  Delta: 'Δ',
+};
+
+/** A letter in running text: w, P_{1}, C_{A}, "the own weight". */
 export function plainLetter(tex: string): string {
   if (tex.includes('self')) return 'the own weight';
-  const subscripts = '₀₁₂₃₄₅₆₇₈₉';
   return tex
-    .replaceAll('\\kappa', 'κ')
-    .replaceAll(/\\[a-zA-Z]+|[{}_]/g, '')
-    .replaceAll(/\d/g, (digit) => subscripts[Number(digit)]!);
+    .replaceAll(/\\([a-zA-Z]+)/g, (_, name: string) => GREEK[name] ?? '')
+    .replace(/^([^_]+)_\{?([^{}]+)\}?$/, '$1_{$2}');
 }
 
 /** "Deflection at B for 1 kN upward at B" */

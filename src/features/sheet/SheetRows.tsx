@@ -114,7 +114,9 @@ function Formula({ block }: { block: Extract<SheetBlock, { kind: 'formula' }> })
   const lines = (isShort ? [symbols + numbers] : [symbols, numbers]).filter((line) => line !== '');
   return (
     <>
-      <p className="cs-step">{title}</p>
+      <p className="cs-step">
+        <RichHtml text={title} />
+      </p>
       {origin !== undefined && <p className="cs-note">{origin}</p>}
       {lines.map((line) => (
         <p key={line} className="cs-formula">

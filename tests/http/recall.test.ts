@@ -227,7 +227,7 @@ describe('a recall', () => {
       decision: 'unaffected',
       note,
     });
-    expect(decided.json.items.find(({ mark }: { mark: string }) => mark === 'D1')).toMatchObject({
+    expect(decided.json.use).toMatchObject({
       decision: 'unaffected',
       note,
       decided_by: 'Person 2',
@@ -415,5 +415,5 @@ test('an owner who has left is told nothing, and somebody else decides', async (
     token,
     json: { decision: 'not_used', note: 'The barn was never built.' },
   });
-  expect(decided.json.items[0].decided_by).toBe('Person 3');
+  expect(decided.json.use.decided_by).toBe('Person 3');
 });

@@ -8,7 +8,7 @@ import { requirePermission } from '@/features/account/permission';
 import { MEMBER_STATUSES } from '@/features/member/terms';
 import { notFound } from '@/lib/app-error';
 import { namesOf } from './people.server';
-import type { RecallItem, RecallView } from './recall';
+import type { DecidedView, RecallItem, RecallView } from './recall';
 import type { Consequence, DocumentKind } from './review';
 import type { Actor } from './rows.server';
 import { derivedFrom, membersById, visibleTo } from './uses.server';
@@ -129,11 +129,34 @@ export function listRecalls(
 
 /** A recall with every use that the reader may know of. */
 export async function toRecallView(tx: Tx, actor: Actor, found: RecallRow): Promise<RecallView> {
-  const { practiceId, personId } = actor;
+  const items = await usesOf(tx, actor, found);
+  const derived = await derivedFrom(tx, actor.practiceId, found.revisionId);
+  return {
+    ...toItem(found),
+    items,
+    hidden: found.uses - items.length,
+    derived: derived.map(({ documentId: _, ...rest }) => rest),
+  };
+}
+
+/** One use as it is decided by now, with how far the recall has come. */
+export async function toDecidedView(
+  tx: Tx,
+  actor: Actor,
+  recallId: string,
+  memberId: string,
+): Promise<DecidedView> {
+  const found = await findRecall(tx, actor, recallId);
+  const [use] = await usesOf(tx, actor, found, eq(recallUse.memberId, memberId));
+  if (!use) throw notFound('This use of the recalled revision');
+  return { recall: toItem(found), use };
+}
+
+async function usesOf(tx: Tx, actor: Actor, found: RecallRow, where?: SQL): Promise<RecallView['items']> {
   const rows = await tx
     .select()
     .from(recallUse)
-    .where(and(eq(recallUse.practiceId, practiceId), eq(recallUse.recallId, found.id)));
+    .where(and(eq(recallUse.practiceId, actor.practiceId), eq(recallUse.recallId, found.id), where));
   const ids = rows.map(({ memberId }) => memberId);
   const visible = await visibleTo(tx, actor, ids);
   const members = await membersById(
@@ -145,7 +168,7 @@ export async function toRecallView(tx: Tx, actor: Actor, found: RecallRow): Prom
     rows.flatMap(({ ownerId, decidedById }) => [ownerId, decidedById]),
   );
   const decisions = new Map(rows.map((row) => [row.memberId, row]));
-  const items = members.flatMap((use): RecallView['items'] => {
+  return members.flatMap((use) => {
     const row = decisions.get(use.memberId);
     if (!row) return [];
     return [
@@ -155,7 +178,7 @@ export async function toRecallView(tx: Tx, actor: Actor, found: RecallRow): Prom
         mark: use.mark,
         status: MEMBER_STATUSES.find((one) => one === use.status) ?? 'draft',
         owner: names.get(row.ownerId) ?? '',
-        mine: row.ownerId === personId,
+        mine: row.ownerId === actor.personId,
         pinned: use.pinned.includes(found.revisionId),
         decision: row.decision,
         note: row.note,
@@ -164,13 +187,4 @@ export async function toRecallView(tx: Tx, actor: Actor, found: RecallRow): Prom
       },
     ];
   });
-  const derived = await derivedFrom(tx, practiceId, found.revisionId);
-  return {
-    ...toItem(found),
-    decided: rows.filter(({ decision }) => decision !== null).length,
-    mine: rows.filter(({ decision, ownerId }) => decision === null && ownerId === personId).length,
-    items,
-    hidden: rows.length - items.length,
-    derived: derived.map(({ documentId: _, ...rest }) => rest),
-  };
 }

@@ -10,8 +10,8 @@ import { openJob } from '@/features/job/job.server';
 import { tell } from '@/features/notice/notice.server';
 import { AppError, invalid, notFound } from '@/lib/app-error';
 import { paths } from '@/paths';
-import { type Decide, type RecallView, WITHOUT_USE } from './recall';
-import { findRecall, type RecallRow, toRecallView } from './recall-view.server';
+import { type Decide, type DecidedView, type RecallView, WITHOUT_USE } from './recall';
+import { findRecall, type RecallRow, toDecidedView, toRecallView } from './recall-view.server';
 import type { Consequence } from './review';
 import { type Actor, nameOfRevision, type RevisionRow } from './rows.server';
 import { membersById } from './uses.server';
@@ -89,7 +89,7 @@ export function readRecall(actor: Actor, id: string): Promise<RecallView> {
 }
 
 /** Records what becomes of one use, by name. It may be decided anew until the recall is closed. */
-export function decideUse(actor: Actor, id: string, memberId: string, given: Decide): Promise<RecallView> {
+export function decideUse(actor: Actor, id: string, memberId: string, given: Decide): Promise<DecidedView> {
   const { practiceId } = actor;
   return withPractice(actor, async (tx) => {
     const found = await lockRecall(tx, actor, id);
@@ -103,7 +103,7 @@ export function decideUse(actor: Actor, id: string, memberId: string, given: Dec
     await openJob(tx, actor, use.job, 'recall.decide');
     await refuseUntrue(tx, found, memberId, given);
     await writeDecision(tx, actor, { recallId: id, memberId, was: use }, given);
-    return toRecallView(tx, actor, found);
+    return toDecidedView(tx, actor, id, memberId);
   });
 }
 

@@ -82,6 +82,10 @@ export const RecallView = RecallItem.extend({
 });
 export type RecallView = z.output<typeof RecallView>;
 
+/** The answer to a decision. */
+export const DecidedView = z.strictObject({ recall: RecallItem, use: RecallUse });
+export type DecidedView = z.output<typeof DecidedView>;
+
 export const recallQuery = {
   state: z.enum(['open', 'closed', 'all']).default('open'),
   /** Only recalls with a use that is the reader's to decide. */

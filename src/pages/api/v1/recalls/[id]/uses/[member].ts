@@ -1,4 +1,4 @@
-import { Decide, RecallView } from '@/features/review/recall';
+import { Decide, DecidedView } from '@/features/review/recall';
 import { decideUse } from '@/features/review/recall.server';
 import { endpoint } from '@/http/endpoint';
 import { idParam } from '@/http/params';
@@ -9,7 +9,7 @@ export const PUT = endpoint(
     description:
       'Kept with the name of whoever decides. `upgraded` and `redesigned` need a member that uses the revision no longer; the others need a reason.',
     body: Decide,
-    answer: RecallView,
+    answer: DecidedView,
   },
   ({ params }, { user, body }) =>
     decideUse(

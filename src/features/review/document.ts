@@ -111,7 +111,7 @@ export const ReviewDue = z.strictObject({
 export type ReviewDue = z.output<typeof ReviewDue>;
 
 /** Where a document is used. */
-export const UseItem = z.strictObject({
+const UseItem = z.strictObject({
   member: z.uuid(),
   job: z.strictObject({ number: z.string(), name: z.string() }),
   mark: z.string(),

@@ -129,7 +129,7 @@ export function keepDocument(
 }
 
 /** Until a document has an issued revision it is called as its draft says. */
-export async function nameDocument(tx: Tx, of: DocumentRow, given: Written): Promise<void> {
+async function nameDocument(tx: Tx, of: DocumentRow, given: Written): Promise<void> {
   const { practiceId, id } = of;
   const [issued] = await tx
     .select({ id: revision.id })

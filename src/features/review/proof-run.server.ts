@@ -16,7 +16,7 @@ interface Proven {
 }
 
 /** The newest finished proof of a revision as it stands, by the engine of today; an older content's proof is none. */
-export async function proofOf(tx: Tx, practiceId: string, { revisionId, sha256 }: Proven) {
+async function proofOf(tx: Tx, practiceId: string, { revisionId, sha256 }: Proven) {
   const [found] = await tx
     .select({ id: proofRun.id, passed: proofRun.passed, finishedAt: proofRun.finishedAt })
     .from(proofRun)

@@ -34,13 +34,7 @@ const toUse = (row: UseRow): Use => ({
   ownerId: row.owner_id,
 });
 
-/** Every member that pins a revision, jobs for named people included. For the library's own work, not to be shown. */
-export async function usesOfRevision(tx: Tx, revisionId: string): Promise<Use[]> {
-  const rows = await tx.execute<UseRow>(sql`select * from uses_of_revision(${revisionId})`);
-  return rows.map(toUse);
-}
-
-/** Every member that pins a revision of a document, with the revision's number. As usesOfRevision. */
+/** Every member that pins a revision of a document, with the revision's number; jobs for named people included, so not to be shown to all. */
 export async function usesOfDocument(
   tx: Tx,
   practiceId: string,
@@ -54,7 +48,7 @@ export async function usesOfDocument(
   return rows.map((row) => ({ ...toUse(row), revision: row.number }));
 }
 
-/** Members by their ids, with the revisions that they pin by now. As usesOfRevision. */
+/** Members by their ids, with the revisions that they pin by now. As usesOfDocument. */
 export async function membersById(
   tx: Tx,
   ids: readonly string[],

@@ -10,7 +10,7 @@ import { noteFaults } from './note';
 import type { DocumentKind } from './review';
 
 /** The document, or every fault of it with a JSON Pointer into what was written. */
-export type DocumentReading = { ok: true; body: object } | { ok: false; faults: Fault[] };
+type DocumentReading = { ok: true; body: object } | { ok: false; faults: Fault[] };
 
 type Reader = (document: Written) => DocumentReading;
 

@@ -28,6 +28,8 @@ export default defineConfig({
       ORIGIN: envField.string({ ...secret, url: true }),
       /** Shows the demo practice's people and their password on the sign-in page. */
       DEMO: envField.boolean({ ...secret, default: false }),
+      /** Of the demo: where the e-mails can be read that its mail catcher has kept. */
+      PUTLOG_DEMO_MAIL: envField.string({ ...secret, url: true, optional: true }),
     },
   },
   experimental: {

@@ -6,6 +6,7 @@ import { PROGRAMS, startAll } from './support/children.mjs';
 import { startCluster, stopCluster } from './support/cluster.mjs';
 import { Stop, step } from './support/command.mjs';
 import { openDatabase, prepareDatabase } from './support/database.mjs';
+import { catchMail } from './support/demo-mail.mjs';
 import { openHome, readJson, writeJson } from './support/home.mjs';
 import { ensureNodePackages } from './support/packages.mjs';
 import { isReady, portIsFree } from './support/ports.mjs';
@@ -76,7 +77,10 @@ async function tidyUp(record) {
 }
 
 async function startChildren(home, record, database) {
+  const mail = demo === 'true' && !process.env.PUTLOG_SMTP_URL ? await catchMail() : null;
+  if (mail) ends.push(mail.stop);
   const env = {
+    ...mail?.env,
     DATABASE_URL: database.app,
     PORT: String(port),
     ORIGIN: origin,

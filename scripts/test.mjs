@@ -8,6 +8,7 @@ import { startAll } from './support/children.mjs';
 import { startCluster, stopCluster } from './support/cluster.mjs';
 import { ROOT, Stop, step } from './support/command.mjs';
 import { createDatabase, prepareDatabase, urls } from './support/database.mjs';
+import { catchMail } from './support/demo-mail.mjs';
 import { openHome, readJson } from './support/home.mjs';
 import { ensureDebianPackages, ensureNodePackages } from './support/packages.mjs';
 import { freePort } from './support/ports.mjs';
@@ -67,7 +68,10 @@ async function e2e() {
   await ensureBuild();
   const port = await freePort();
   const origin = `http://localhost:${port}`;
+  const mail = await catchMail();
+  ends.push(mail.stop);
   const settings = {
+    ...mail.env,
     DATABASE_URL: app,
     PORT: String(port),
     ORIGIN: origin,

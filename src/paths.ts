@@ -5,6 +5,9 @@ export const paths = {
   signOut: '/sign-out',
   refused: '/refused',
   account: '/account',
+  notices: '/notices',
+  /** Of the demo: the e-mails that were caught. */
+  demoMail: '/demo-mail',
   templates: '/templates',
   template: (slug: string) => `/templates/${encodeURIComponent(slug)}`,
   templateRevision: (slug: string, number: number) =>
@@ -37,6 +40,9 @@ export const paths = {
   readyz: '/readyz',
   api: {
     me: '/api/v1/me',
+    events: '/api/v1/events',
+    notices: '/api/v1/notices',
+    readNotices: '/api/v1/notices/read',
     password: '/api/v1/me/password',
     session: '/api/v1/session',
     sessions: '/api/v1/sessions',

@@ -280,3 +280,39 @@ describe('a stream', () => {
     expect((await ask('GET', '/api/v1/events')).status).toBe(401);
   });
 });
+
+describe('the choice of e-mails', () => {
+  test('begins with the usual, is kept, and changes what comes', async () => {
+    const [chooser] = await foundPractice(['engineer']);
+    const token = await createApiToken(chooser.email);
+    const address = '/api/v1/notices/preferences';
+    const { json: usual } = await ask('GET', address, { token });
+    expect(usual).toMatchObject({ returned: 'immediate', issued: 'digest' });
+    const chosen = { ...usual, returned: 'none', issued: 'immediate' };
+    expect((await ask('PUT', address, { token, json: chosen })).json).toEqual(chosen);
+    expect((await ask('GET', address, { token })).json).toEqual(chosen);
+    await say(chooser, event([chooser], { kind: 'returned', dedupe: 'r' }));
+    await say(chooser, event([chooser], { kind: 'issued', dedupe: 'i' }));
+    expect((await messagesTo(chooser)).map(({ kind, mode }) => [kind, mode])).toEqual([
+      ['issued', 'immediate'],
+    ]);
+  });
+
+  test('cannot mute a recall: not here, and not in the database', async () => {
+    const [chooser] = await foundPractice(['engineer']);
+    const token = await createApiToken(chooser.email);
+    const { json: usual } = await ask('GET', '/api/v1/notices/preferences', { token });
+    const { status, json } = await ask('PUT', '/api/v1/notices/preferences', {
+      token,
+      json: { ...usual, recall: 'none' },
+    });
+    expect([status, json.errors[0].pointer]).toEqual([422, '/recall']);
+    const { practiceId, personId } = chooser;
+    const insert = withPractice(chooser, (tx) =>
+      tx.insert(noticePreference).values({ practiceId, personId, kind: 'recall', mode: 'none' }),
+    );
+    await expect(insert).rejects.toMatchObject({
+      cause: { constraint_name: 'notice_preference_not_recall' },
+    });
+  });
+});

@@ -22,8 +22,9 @@ export const DONE = {
   settings: 'Saved.',
   password: 'The password is changed. Other sessions were ended.',
   session: 'The session is ended.',
+  notices: 'Saved.',
 } as const;
 export type Done = keyof typeof DONE;
 
 export const readDone = (text: string | null): Done | undefined =>
-  (['settings', 'password', 'session'] as const).find((done) => done === text);
+  (['settings', 'password', 'session', 'notices'] as const).find((done) => done === text);

@@ -1,5 +1,5 @@
 import { z } from 'zod';
-import { NOTICE_KINDS, type NoticeKind } from './terms';
+import { MAIL_MODES, NOTICE_KINDS, type NoticeKind, USUAL_MODE } from './terms';
 
 /** What the e-mail says besides the notice's own title and detail. */
 export const MailData = z.strictObject({
@@ -52,6 +52,45 @@ export const NoticePlace = z.tuple([z.boolean(), z.string(), z.uuid()]);
 export type NoticePlace = z.output<typeof NoticePlace>;
 
 export const UnreadCount = z.strictObject({ unread: z.int() });
+
+/** What a kind is called, and what it tells. */
+export const KIND_WORDS: Readonly<Record<NoticeKind, { readonly name: string; readonly tells: string }>> = {
+  recall: { name: 'Recall', tells: 'A revision that your members use was found wrong.' },
+  withdrawn: { name: 'Withdrawn', tells: 'A document that you watch was withdrawn.' },
+  issued: { name: 'Issued', tells: 'A document that you watch or use has a new revision.' },
+  submitted: { name: 'For review', tells: 'A draft waits for a reviewer.' },
+  returned: { name: 'Returned', tells: 'A draft of yours came back from review.' },
+  commented: { name: 'Comment', tells: 'Somebody commented on what you wrote or review.' },
+  review_due: { name: 'Review due', tells: 'A document’s review-by date is near or past.' },
+  request: { name: 'Request', tells: 'A request or defect was raised, answered or done.' },
+};
+
+/** The kinds whose e-mails can be chosen: a recall always comes at once. */
+const CHOSEN_KINDS = NOTICE_KINDS.filter((kind) => kind !== 'recall');
+type ChosenKind = (typeof CHOSEN_KINDS)[number];
+
+export const MODE_CHOICES = [
+  { value: 'immediate', label: 'At once' },
+  { value: 'digest', label: 'Once a day' },
+  { value: 'none', label: 'No e-mail' },
+] as const;
+
+const mode = z.enum([...MAIL_MODES, 'none']);
+
+/** How a person takes the e-mails of each kind. */
+export const Preferences = z.strictObject({
+  withdrawn: mode,
+  issued: mode,
+  submitted: mode,
+  returned: mode,
+  commented: mode,
+  review_due: mode,
+  request: mode,
+} satisfies Record<ChosenKind, typeof mode>);
+export type Preferences = z.output<typeof Preferences>;
+
+/** Of whoever has chosen nothing. */
+export const USUAL_PREFERENCES: Preferences = Preferences.strip().parse(USUAL_MODE);
 
 const DIGEST_HOUR = 6; // UTC
 

@@ -1,7 +1,7 @@
 import { describe, expect, test } from 'vitest';
 import { solveBeam } from '@/engine/beam/index';
 import { derive } from '@/engine/derivation/index';
-import { admissibleSets, type Beam, readBeam } from '@/engine/model/index';
+import { admissibleSets, type Beam, type Redundant, readBeam } from '@/engine/model/index';
 import { readQuantity } from '@/engine/quantity';
 import type { Instance } from '@/engine/template';
 import { type Checked, checkDerivation, nothingChecked } from '../support/derivation-check';
@@ -46,25 +46,48 @@ function checkReactions(beam: Beam, steps: ReturnType<typeof derive>, where: str
   }
 }
 
+/** f_ij and f_ji, each by its own form. */
+function checkReciprocity(steps: ReturnType<typeof derive>, where: string): void {
+  const values = new Map(steps.map(({ id, value }) => [id, value]));
+  for (const { id, value } of steps) {
+    const [, unit, at] = /^reciprocal-((?:turn-)?\w+)-((?:turn-)?\w+)$/.exec(id) ?? [];
+    if (unit) expect(value, `${where} ${id}`).toBe(values.get(`flexibility-${at}-${unit}`));
+  }
+}
+
+/** Both the reaction and the moment of one support are released: a hinge is left within a span. */
+const leavesHinge = (beam: Beam, redundants: readonly Redundant[]): boolean =>
+  redundants.some(
+    (one) =>
+      one.component === 'moment' &&
+      redundants.some(
+        (other) => other.component === 'vertical' && beam.supports[other.support]!.at === one.at,
+      ),
+  );
+
+const inputOf = ({ beam, instance }: Case, redundants: readonly Redundant[] | undefined) => ({
+  beam,
+  redundants: redundants && redundants.length > 0 ? redundants : undefined,
+  names: { lengths: instance.dimensions, loads: instance.loadNames },
+});
+
+const setsOf = ({ beam, instance }: Case) =>
+  beam.degree <= MOST ? [...admissibleSets(beam)] : [instance.beam.redundants];
+
 describe.each([...writtenTemplates.keys()])('%s', (slug) => {
   test('every admissible set, at the defaults and at every proof case, recalculates in both unit systems', {
     timeout: 300_000,
   }, () => {
     const counts: Checked = nothingChecked();
-    for (const { name, beam, instance } of casesOf(slug)) {
-      const sets = beam.degree <= MOST ? [...admissibleSets(beam)] : [instance.beam.redundants];
-      for (const redundants of sets) {
+    for (const one of casesOf(slug)) {
+      for (const redundants of setsOf(one)) {
         for (const system of SYSTEMS) {
-          const where = `${slug}, ${name}, ${JSON.stringify(redundants)}, ${system}`;
-          const steps = derive({
-            beam,
-            redundants: redundants && redundants.length > 0 ? redundants : undefined,
-            names: { lengths: instance.dimensions, loads: instance.loadNames },
-            system,
-          });
+          const where = `${slug}, ${one.name}, ${JSON.stringify(redundants)}, ${system}`;
+          const steps = derive({ ...inputOf(one, redundants), system });
           checkDerivation(steps, where, counts);
-          checkReactions(beam, steps, where);
-          if (beam.degree > 0)
+          checkReactions(one.beam, steps, where);
+          checkReciprocity(steps, where);
+          if (one.beam.degree > 0)
             expect(
               steps.some(({ key }) => key),
               where,
@@ -73,5 +96,31 @@ describe.each([...writtenTemplates.keys()])('%s', (slug) => {
       }
     }
     expect(counts.recalculated).toBeGreaterThan(0);
+  });
+
+  test('every released beam of spans and cantilevers is worked by charts', { timeout: 300_000 }, () => {
+    for (const one of casesOf(slug).slice(0, 1)) {
+      for (const redundants of setsOf(one)) {
+        if (redundants && leavesHinge(one.beam, redundants)) continue;
+        const steps = derive(inputOf(one, redundants));
+        const integrated = steps.filter(({ symbols }) => symbols.includes('\\int'));
+        expect(integrated, `${slug}, ${JSON.stringify(redundants)}`).toEqual([]);
+      }
+    }
+  });
+
+  test('with a section’s weight and shear it recalculates too', { timeout: 300_000 }, () => {
+    const template = shippedTemplate(slug);
+    const instance = instanceAt(template, {}, { ga: 6e7, selfWeight: 361.5 });
+    const reading = readBeam(instance.beam);
+    if (!reading.ok) throw new Error(JSON.stringify(reading.faults));
+    const one = { name: 'with a section', instance, beam: reading.value };
+    for (const redundants of setsOf(one)) {
+      const where = `${slug}, ${one.name}, ${JSON.stringify(redundants)}`;
+      const steps = derive(inputOf(one, redundants));
+      checkDerivation(steps, where);
+      checkReactions(one.beam, steps, where);
+      checkReciprocity(steps, where);
+    }
   });
 });

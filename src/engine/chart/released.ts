@@ -1,6 +1,6 @@
 import { cantileverTerms } from './cantilever';
 import type { Movement } from './case';
-import { divide, type Expression, expand, negate, subtract, ZERO } from './expression';
+import { divide, type Expression, expand, negate, simplest, subtract, ZERO } from './expression';
 import { type Axis, along, forceOf, localLoad, momentAbout, type NamedLoad } from './load';
 import { compare, type Setting } from './setting';
 import { shearAreas } from './shear';
@@ -81,7 +81,8 @@ export function shearTerms(
   const local = loads.map((load) => localLoad(axis, load));
   const [S, T] = shearAreas(released.kind, local, x, length, setting);
   const values = { S, T, GA: ga, ...(length && { L: length }) };
-  return onBeam([chartTerm(`${released.kind}-shear`, movement, values, x, setting)], axis, movement);
+  const term = chartTerm(`${released.kind}-shear`, movement, values, x, setting);
+  return onBeam([{ ...term, value: simplest(term.value) }], axis, movement);
 }
 
 /** What the supports of the released beam carry of a load. */

@@ -7,7 +7,7 @@ import { createApiToken } from '@/features/account/token.server';
 import { holdForUse } from '@/features/review/pin.server';
 import { takeStep } from '@/features/review/review.server';
 import { type Answer, ask } from '../support/app';
-import { issueTemplate, proveRevision } from '../support/library';
+import { issueCriteria, issueSections, issueTemplate, proveRevision } from '../support/library';
 import { foundPractice, letGo, type Member, owner } from '../support/practice';
 
 const SPAN = 'simple-span-uniform';
@@ -202,6 +202,74 @@ describe('a withdrawn revision', () => {
       expect((await withdraw(by, slug)).status).toBe(403);
     expect((await withdraw('librarian', slug)).status).toBe(200);
     expect((await withdraw('librarian', slug)).status).toBe(409);
+  });
+});
+
+describe('criteria and sections', () => {
+  const pair = () => ({ author: people.librarian, reviewer: people.checker });
+  const withCriteria = (mark: string) =>
+    ask('POST', '/api/v1/jobs/OPEN/members', {
+      token: tokens.engineer,
+      json: {
+        mark,
+        template: 'plain-span',
+        section: { designation: 'IPE 300', table: 'european-i', material: 's355' },
+        criteria: 'steel-elastic-en',
+      },
+    });
+
+  test('are recalled and refused by the same mechanism', { timeout: 60_000 }, async () => {
+    const change = { slug: 'plain-span', reference: 'Plain 1' };
+    await issueTemplate(pair(), SPAN, { slug: 'plain-span', change });
+    const edition = await issueSections(pair(), 'european-i');
+    const { slug } = await issueCriteria(pair(), 'steel-elastic-en');
+    expect((await withCriteria('CR1')).status).toBe(201);
+    const uses = await ask('GET', `/api/v1/library/section-table/european-i/uses`, {
+      token: tokens.librarian,
+    });
+    expect(uses.json.items).toMatchObject([{ mark: 'CR1', revision: 1 }]);
+
+    const table = await takeStep(people.librarian, edition.revisionId, {
+      step: 'withdraw',
+      reason: 'The columns were shifted.',
+      severity: 'safety',
+    });
+    const noSection = await withCriteria('CR2');
+    expect(faults(noSection)).toEqual(['/section/designation withdrawn']);
+    expect(noSection.json.detail).toContain('The columns were shifted.');
+    const { json: criteria } = await ask('POST', `/api/v1/library/criteria/${slug}/revisions/1/withdraw`, {
+      token: tokens.principal,
+      json: { reason: 'A factor is from the draft of the code.', severity: 'service' },
+    });
+    await issueSections(pair(), 'european-i');
+    const noCriteria = await withCriteria('CR2');
+    expect(faults(noCriteria)).toEqual(['/criteria not_issued']);
+    expect(noCriteria.json.detail).toContain('A factor is from the draft of the code.');
+    for (const id of [table.recallId, criteria.recall]) {
+      const { json } = await recall(id);
+      expect(json.items.map(({ mark }: { mark: string }) => mark)).toEqual(['CR1']);
+    }
+    const held = (await member('engineer', 'OPEN', 'CR1')).json;
+    expect(held.section).toMatchObject({
+      state: 'withdrawn',
+      withdrawal_reason: 'The columns were shifted.',
+      recall: { id: table.recallId, decided: false },
+      newer: 2,
+    });
+    expect(held.criteria).toMatchObject({ state: 'withdrawn', recall: { id: criteria.recall } });
+    const moved = await ask('PUT', '/api/v1/jobs/OPEN/members/CR1', {
+      token: tokens.engineer,
+      json: {
+        parameters: held.parameters,
+        section: { designation: 'IPE 300', table: 'european-i', material: 's355' },
+        criteria: null,
+        section_edition: 2,
+      },
+      headers: { 'if-match': '"1"' },
+    });
+    expect(moved.json.section).toMatchObject({ edition: 2, state: 'issued', recall: null });
+    for (const id of [table.recallId, criteria.recall])
+      expect((await recall(id)).json.items[0].decision).toBe('upgraded');
   });
 });
 

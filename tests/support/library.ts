@@ -1,5 +1,6 @@
 import { readFileSync } from 'node:fs';
 import { withPractice } from '@/db/tenancy';
+import { criteriaDocument } from '@/engine/check';
 import { recordProof } from '@/features/review/proof-run.server';
 import type { DocumentKind } from '@/features/review/review';
 import { createDraft, type DraftKey, takeStep } from '@/features/review/review.server';
@@ -83,3 +84,11 @@ export async function issueSections(pair: Pair, slug: string): Promise<DraftKey>
     ),
   );
 }
+
+/** Shipped criteria, issued. */
+export const issueCriteria = async (pair: Pair, slug: string): Promise<DraftKey & { slug: string }> => {
+  const body = criteriaDocument.parse(JSON.parse(readFileSync(`data/criteria/${slug}.json`, 'utf8')));
+  const { reference, name } = body;
+  const document: Document = { kind: 'criteria', slug, reference, name, body };
+  return { ...(await issue(pair, await draft(pair.author, document, 'First issue.'))), slug };
+};

@@ -77,6 +77,9 @@ const refused = (pointer: string, code: string, message: string) => {
   return invalid([fault]);
 };
 
+const withdrawn = (found: LibraryRevision | undefined): string =>
+  found?.withdrawalReason ? `: revision ${found.number} was withdrawn (${found.withdrawalReason})` : '';
+
 /** The issued revision of a template, for a new member; 422 where there is none to place. */
 export async function placeTemplate(tx: Tx, practiceId: string, slug: string): Promise<Pins['template']> {
   const found = await findRevision(tx, practiceId, { kind: 'template', slug });
@@ -90,7 +93,7 @@ export async function placeTemplate(tx: Tx, practiceId: string, slug: string): P
     throw refused(
       '/template',
       'not_issued',
-      `${found.reference} has no issued revision${found.withdrawalReason ? `: it was withdrawn (${found.withdrawalReason})` : ''}. Members are made from issued templates only; choose another.`,
+      `${found.reference} has no issued revision${withdrawn(found)}. Members are made from issued templates only; choose another.`,
     );
   await holdForUse(tx, practiceId, found.revisionId, '/template');
   return asTemplate(found);
@@ -144,7 +147,7 @@ export async function placeCriteria(
   throw refused(
     '/criteria',
     found ? 'not_issued' : 'unknown_criteria',
-    `There are no issued criteria “${slug}”. Choose from the list.`,
+    `There are no issued criteria “${slug}”${withdrawn(found)}. Choose from the list.`,
   );
 }
 

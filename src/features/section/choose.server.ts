@@ -1,4 +1,4 @@
-import { and, eq } from 'drizzle-orm';
+import { and, desc, eq } from 'drizzle-orm';
 import type { Tx } from '@/db/client';
 import { document, revision } from '@/db/schema/library';
 import { section } from '@/db/schema/section';
@@ -91,6 +91,7 @@ export async function chooseSection(
   );
   const [first, ...others] = found;
   if (first && others.length === 0) return first;
+  if (!first) await refuseWithdrawn(tx, practiceId, { designation, table }, at);
   const tables = found.map((one) => `“${one.table}”`).join(', ');
   throw invalid([
     first
@@ -107,6 +108,29 @@ export async function chooseSection(
           `There is no section “${designation}” in ${table === undefined ? 'the issued tables' : `the table “${table}”`}. Search the sections for it.`,
         ),
   ]);
+}
+
+/** A section that stands in a withdrawn edition alone is refused with the reason of the withdrawal. */
+async function refuseWithdrawn(
+  tx: Tx,
+  practiceId: string,
+  { designation, table }: SectionKey,
+  at: string,
+): Promise<void> {
+  const [found] = await select(tx)
+    .where(
+      and(
+        eq(section.practiceId, practiceId),
+        eq(revision.state, 'withdrawn'),
+        eq(section.designationKey, designationKey(designation)),
+        table === undefined ? undefined : eq(section.tableSlug, table),
+      ),
+    )
+    .orderBy(desc(revision.number))
+    .limit(1);
+  if (!found) return;
+  const message = `“${designation}” stands in edition ${found.edition} of ${found.tableName}, which was withdrawn: ${found.withdrawalReason} Choose a section of another table.`;
+  throw invalid([fault(at, 'designation', 'withdrawn', message)]);
 }
 
 /** A shipped material by its id, or 422. */

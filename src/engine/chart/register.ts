@@ -1,11 +1,22 @@
 import type { CaseRow, ChartCase, Formulas, ReleasedKind } from './case';
 import { CASES } from './cases';
+import type { Expression } from './expression';
 import { formula } from './formula';
 
-const curve = ([deflection, slope]: Formulas): ChartCase['within'] => ({
-  deflection: formula(deflection),
-  slope: formula(slope),
-});
+/** A formula is read when it is first asked for: one derivation needs few of them. */
+function curve([deflection, slope]: Formulas): ChartCase['within'] {
+  const read: { deflection?: Expression; slope?: Expression } = {};
+  return {
+    get deflection() {
+      read.deflection ??= formula(deflection);
+      return read.deflection;
+    },
+    get slope() {
+      read.slope ??= formula(slope);
+      return read.slope;
+    },
+  };
+}
 
 const read = ({ within, beyond, ...row }: CaseRow): ChartCase => ({
   ...row,

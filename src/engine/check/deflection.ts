@@ -41,6 +41,10 @@ function ratioInWords(limit: DeflectionLimit, { kind }: Region): string {
   return `${limit.overhang_factor === 1 ? '' : limit.overhang_factor}a/${limit.overhang_ratio}`;
 }
 
+/** The id of the row of a limit, by its place among those that act, in a region. */
+export const deflectionId = (limit: number, { name }: Region): string =>
+  `deflection-${limit}-${name.replaceAll(/[^A-Za-z]+/g, '-')}`;
+
 /**
  * One row per limit and region: δ ≤ L/n of a span, or its multiple of an overhang, and the absolute cap. The most of
  * either sign over all patterns: upward movement is held to the same ratio.
@@ -64,7 +68,7 @@ export function deflectionChecks(
       const isCapped = capacity === limit.cap;
       const words = isCapped ? 'cap' : ratioInWords(limit, region);
       return {
-        id: `deflection-${index}-${region.name.replaceAll(/[^A-Za-z]+/g, '-')}`,
+        id: deflectionId(index, region),
         kind: 'deflection',
         title: `Deflection, ${limit.name.toLowerCase()}, ${words}`,
         place: `${region.name}, ${nameOf(by)}${value > 0 ? ', upward' : ''}`,

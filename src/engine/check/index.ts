@@ -4,6 +4,7 @@ export {
   type DeflectionLimit,
   type Pattern,
 } from './criteria';
+export { deflectionId } from './deflection';
 export { checkMember } from './member';
 export type {
   CheckKind,

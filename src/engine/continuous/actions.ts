@@ -1,4 +1,4 @@
-import type { Load } from '../model/index';
+import type { CurvatureLoad, LineLoad, Load } from '../model/index';
 import type { Geometry } from './geometry';
 
 /** Puts the sum of the loads on the pieces; they act at points of the geometry. Those of no length cover no piece. */
@@ -8,12 +8,12 @@ export function applyLoads(geometry: Geometry, loads: readonly Load[]): void {
   geometry.turned = geometry.holds;
   for (let i = 0; i < loads.length; i++) {
     const load = loads[i]!;
-    if (load.kind === 'line') spread(geometry, load.from, load.to, load.w0, load.w1);
+    if (load.kind === 'line') spread(geometry, load);
     else if (load.kind === 'point') piece[geometry.pointAt(load.at)]!.force += load.p;
     else if (load.kind === 'couple') {
       piece[geometry.pointAt(load.at)]!.couple += load.m;
       geometry.turned = true;
-    } else bend(geometry, load.from, load.to, load.kappa);
+    } else bend(geometry, load);
   }
 }
 
@@ -28,7 +28,7 @@ function clear({ piece, points }: Geometry): void {
   }
 }
 
-function spread(geometry: Geometry, from: number, to: number, w0: number, w1: number): void {
+function spread(geometry: Geometry, { from, to, w0, w1 }: LineLoad): void {
   const { piece } = geometry;
   const last = geometry.pointAt(to);
   let k = geometry.pointAt(from);
@@ -44,7 +44,7 @@ function spread(geometry: Geometry, from: number, to: number, w0: number, w1: nu
   }
 }
 
-function bend(geometry: Geometry, from: number, to: number, kappa: number): void {
+function bend(geometry: Geometry, { from, to, kappa }: CurvatureLoad): void {
   const { piece } = geometry;
   const last = geometry.pointAt(to);
   for (let k = geometry.pointAt(from); k < last; k++) piece[k]!.curvature += kappa;

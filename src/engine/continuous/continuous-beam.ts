@@ -5,7 +5,7 @@ import { diagramsOf } from './diagrams';
 import { ExtremeFinder } from './extremes';
 import { Geometry } from './geometry';
 import { FastProof } from './proof';
-import { factoriseRigid, solveRigid } from './rigid';
+import { RigidEquations } from './rigid';
 import { measureSpan } from './span';
 import { SprungEquations } from './sprung';
 import { hangOverhangs } from './statics';
@@ -35,6 +35,7 @@ export type FastExtremes = Pick<ExtremeFinder, 'shear' | 'moment' | 'slope' | 'd
  */
 export class ContinuousBeam {
   private readonly geometry = new Geometry();
+  private readonly rigid = new RigidEquations();
   private readonly sprung = new SprungEquations();
   private readonly sweep = new Sweep();
   private readonly finder = new ExtremeFinder();
@@ -68,9 +69,9 @@ export class ContinuousBeam {
     this.found = false;
     const moved = this.moved ? 1 : 0;
     applyLoads(geometry, loads);
-    const hanging = hangOverhangs(geometry);
-    if (geometry.sprung) this.sprung.solve(geometry, moved, hanging);
-    else solveRigid(geometry, moved);
+    hangOverhangs(geometry);
+    if (geometry.sprung) this.sprung.solve(geometry, moved);
+    else this.rigid.solve(geometry, moved);
     this.sweep.run(geometry, moved);
   }
 
@@ -86,7 +87,7 @@ export class ContinuousBeam {
    */
   stations(at: number | ArrayLike<number> = 11, side: Side = 'right'): StationValues {
     const { values, geometry } = this;
-    if (typeof at === 'number') values.placeEvenly(at, geometry.length);
+    if (typeof at === 'number') values.placeEvenly(geometry, at);
     else values.placeAt(at);
     values.read(geometry, side);
     return values;
@@ -144,7 +145,7 @@ export class ContinuousBeam {
     const { geometry } = this;
     const { supports, support, span, piece } = geometry;
     for (let j = 0; j + 1 < supports; j++) measureSpan(span[j]!, piece, support[j]!, support[j + 1]!);
-    return geometry.sprung ? this.sprung.factorise(geometry) : factoriseRigid(geometry);
+    return geometry.sprung ? this.sprung.factorise(geometry) : this.rigid.factorise(geometry);
   }
 }
 

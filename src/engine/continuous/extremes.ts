@@ -1,6 +1,6 @@
 import type { Geometry } from './geometry';
 import type { Piece } from './records';
-import { monotoneZero, quadraticZeros, quartic } from './zeros';
+import { findMonotoneZero, quadraticZeros, quartic } from './zeros';
 
 const THIRD = 1 / 3; // a product is several times faster than a quotient
 const FIFTH = 1 / 5;
@@ -38,19 +38,22 @@ export class ExtremeFinder {
   readonly slope = new Range();
   readonly deflection = new Range();
 
+  private readonly ranges = [this.shear, this.moment, this.slope, this.deflection] as const;
   /** θ and θ' on the piece at hand, lowest power first. */
   private readonly theta = new Float64Array(5);
   private readonly bend = new Float64Array(5);
   /** Places where θ' turns, and where θ does. */
   private readonly few = new Float64Array(2);
   private readonly turns = new Float64Array(3);
-  private readonly stretch = new Float64Array(4);
+  private readonly stretch = new Float64Array(5);
 
   find(geometry: Geometry): void {
-    compareEnds(geometry, this.shear, 0, 4);
-    compareEnds(geometry, this.moment, 1, geometry.turned ? 4 : 8);
-    compareEnds(geometry, this.slope, 2, geometry.shears ? 4 : 8);
-    compareEnds(geometry, this.deflection, 3, 8);
+    const { ranges } = this;
+    for (let quantity = 0; quantity < 4; quantity++) {
+      // Where a quantity does not jump from piece to piece, left ends and the last right end are all of it.
+      const jumps = quantity === 0 || (quantity === 1 && geometry.turned) || (quantity === 2 && geometry.shears);
+      compareEnds(geometry, ranges[quantity]!, quantity, jumps ? 4 : 8);
+    }
     this.searchPieces(geometry);
   }
 
@@ -135,16 +138,22 @@ export class ExtremeFinder {
     const { moment, slope, deflection, turns, stretch } = this;
     const V = states[i]!;
     const M = states[i + 1]!;
-    if (V * states[i + 4]! < 0) moment.add(M + (V * V) / (2 * start), from + V / start);
-
+    const kappa = curvature + shearing * start;
     const t0 = states[i + 2]!;
-    const t1 = b * M + curvature + shearing * start;
+    const t1 = b * M + kappa;
+    const last = b * states[i + 5]! + kappa;
+    let crest = t1;
+    if (V * states[i + 4]! < 0) {
+      const s = V / start;
+      const M0 = M + (V * s) / 2;
+      moment.add(M0, from + s);
+      crest = b * M0 + kappa;
+    }
     const t2 = (b * V) / 2;
     const t3 = b * start * -SIXTH;
     let count = 0;
-    const discriminant = t2 * t2 - 3 * t1 * t3;
-    if (discriminant > 0) {
-      const root = Math.sqrt(discriminant);
+    if (t1 * last < 0 || t1 * crest < 0) {
+      const root = Math.sqrt(t2 * t2 - 3 * t1 * t3);
       const q = t2 < 0 ? root - t2 : -t2 - root; // no difference of nearly equal numbers
       const one = t1 / q;
       const other = q / (3 * t3);
@@ -212,7 +221,10 @@ export class ExtremeFinder {
     for (let n = 0; n <= count; n++) {
       stretch[1] = n < count ? few[n]! : length;
       stretch[3] = quartic(bend, stretch[1]!);
-      if (stretch[2]! * stretch[3]! < 0) turns[found++] = monotoneZero(bend, stretch);
+      if (stretch[2]! * stretch[3]! < 0) {
+        findMonotoneZero(bend, stretch);
+        turns[found++] = stretch[4]!;
+      }
       stretch[0] = stretch[1]!;
       stretch[2] = stretch[3]!;
     }
@@ -257,8 +269,11 @@ export class ExtremeFinder {
 
   /** The deflection where θ = 0 in the stretch. */
   private addLevel({ from }: Piece, states: Float64Array, i: number): void {
-    const level = monotoneZero(this.theta, this.stretch);
-    this.deflection.add(this.deflectionAt(states, i, level), from + level);
+    const { theta, stretch, deflection } = this;
+    findMonotoneZero(theta, stretch);
+    const s = stretch[4]!;
+    const rest = theta[2]! * THIRD + s * (theta[3]! / 4 + s * theta[4]! * FIFTH);
+    deflection.add(states[i + 3]! + s * (theta[0]! + s * (theta[1]! / 2 + s * rest)), from + s);
   }
 
   private deflectionAt(states: Float64Array, i: number, s: number): number {

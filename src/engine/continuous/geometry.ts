@@ -1,4 +1,4 @@
-import type { Beam, Load, Restraint, Segment } from '../model/index';
+import type { Beam, Restraint, Segment } from '../model/index';
 import { Piece, Span, Support } from './records';
 
 /** Positions up to this many are put in order one by one, which for few is faster than the library's sort. */
@@ -13,6 +13,8 @@ export class Geometry {
   length = 0;
   points = 0;
   supports = 0;
+  /** Shear just left of the first support, of the overhang's loads. */
+  hanging = NaN;
   /** Whether any support is a spring against vertical movement. */
   sprung = false;
   /** Whether any support holds rotation; whether M jumps, there or at a couple; whether θ does, where the beam shears. */
@@ -120,34 +122,39 @@ export class Geometry {
     }
   }
 
-  /** Positions inside the beam of steps, loads, and supports that hold nothing: ascending, repeats included. */
+  /** Positions of steps, loads, and supports that hold nothing: ascending, repeats included. */
   private markPositions({ segments, supports, loads }: Beam): void {
     const most = segments.length + supports.length + 2 * loads.length;
     if (most > this.marks.length) this.marks = new Float64Array(2 * most);
-    this.marked = 0;
-    for (let i = 0; i + 1 < segments.length; i++) this.mark(segments[i]!.to);
-    if (this.supports < supports.length) {
-      for (let i = 0; i < supports.length; i++)
-        if (supports[i]!.vertical.kind === 'free') this.mark(supports[i]!.at);
-    }
-    for (let i = 0; i < loads.length; i++) this.markLoad(loads[i]!);
-    if (this.marked > FEW) this.marks.subarray(0, this.marked).sort();
-  }
-
-  private markLoad(load: Load): void {
-    if (load.kind === 'point' || load.kind === 'couple') this.mark(load.at);
-    else {
-      this.mark(load.from);
-      this.mark(load.to);
-    }
-  }
-
-  private mark(x: number): void {
-    if (x <= 0 || x >= this.length) return;
     const { marks } = this;
-    let i = this.marked++;
-    if (i < FEW) for (; i > 0 && marks[i - 1]! > x; i--) marks[i] = marks[i - 1]!;
-    marks[i] = x;
+    let count = 0;
+    for (let i = 0; i + 1 < segments.length; i++) marks[count++] = segments[i]!.to;
+    if (this.supports < supports.length) {
+      for (let i = 0; i < supports.length; i++) {
+        if (supports[i]!.vertical.kind === 'free') marks[count++] = supports[i]!.at;
+      }
+    }
+    for (let i = 0; i < loads.length; i++) {
+      const load = loads[i]!;
+      if (load.kind === 'point' || load.kind === 'couple') marks[count++] = load.at;
+      else {
+        marks[count++] = load.from;
+        marks[count++] = load.to;
+      }
+    }
+    this.marked = count;
+    if (count > FEW) marks.subarray(0, count).sort();
+    else this.sortFew();
+  }
+
+  private sortFew(): void {
+    const { marks, marked } = this;
+    for (let i = 1; i < marked; i++) {
+      const x = marks[i]!;
+      let j = i;
+      for (; j > 0 && marks[j - 1]! > x; j--) marks[j] = marks[j - 1]!;
+      marks[j] = x;
+    }
   }
 
   private mergePoints(): void {

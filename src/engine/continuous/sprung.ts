@@ -28,10 +28,10 @@ export class SprungEquations {
     return this.eliminate();
   }
 
-  /** The moments beside every support; `hanging` is the shear just left of the first. */
-  solve(geometry: Geometry, moved: number, hanging: number): void {
+  /** The moments beside every support. */
+  solve(geometry: Geometry, moved: number): void {
     this.closeGaps(geometry, moved);
-    for (let j = 0; j < geometry.supports; j++) this.lift(geometry, j, moved, hanging);
+    for (let j = 0; j < geometry.supports; j++) this.lift(geometry, j, moved);
     this.leaveOutKnown(geometry);
     this.substitute();
     const { supports, support } = geometry;
@@ -41,7 +41,7 @@ export class SprungEquations {
     }
     for (let j = 0; j < supports; j++) {
       const { give, rise } = support[j]!;
-      support[j]!.risen = moved * rise - give * reactionAt(geometry, j, hanging);
+      support[j]!.risen = moved * rise - give * reactionAt(geometry, j);
     }
   }
 
@@ -171,11 +171,11 @@ export class SprungEquations {
   }
 
   /** What the rise of support j, prescribed and by its reaction to the loads, does to the gaps. */
-  private lift(geometry: Geometry, j: number, moved: number, hanging: number): void {
+  private lift(geometry: Geometry, j: number, moved: number): void {
     const { support, span } = geometry;
     const last = geometry.supports - 1;
     const { give, rise } = support[j]!;
-    const risen = moved * rise - give * reactionAt(geometry, j, hanging);
+    const risen = moved * rise - give * reactionAt(geometry, j);
     for (let p = j === 0 ? 2 : 0; p < (j === last ? 2 : 4); p++) {
       this.values[this.partner(j, p)]! += risen * reaction(span, j, p);
     }
@@ -205,7 +205,7 @@ function reaction(span: Geometry['span'], j: number, p: number): number {
 }
 
 /** The upward reaction of support j with the moments beside the supports as they are so far. */
-function reactionAt({ supports, support, span, piece }: Geometry, j: number, hanging: number): number {
+function reactionAt({ supports, support, span, piece, hanging }: Geometry, j: number): number {
   const { left, right, point } = support[j]!;
   let before = hanging;
   let after = span[j]!.shear;

@@ -4,9 +4,9 @@ const THIRD = 1 / 3; // a product is several times faster than a quotient
 
 /**
  * The moments that equilibrium alone tells, at the inner ends of the overhangs, and through outer supports that let the
- * beam turn; the shear just right of the last support. Answers the shear just left of the first.
+ * beam turn; the shear just right of the last support. The shear just left of the first is the geometry's.
  */
-export function hangOverhangs(geometry: Geometry): number {
+export function hangOverhangs(geometry: Geometry): void {
   hangRight(geometry);
   const { supports, support, piece } = geometry;
   const first = support[0]!;
@@ -21,7 +21,7 @@ export function hangOverhangs(geometry: Geometry): number {
   }
   first.left = M;
   if (!first.held && supports > 1) first.right = M - piece[first.point]!.couple;
-  return V;
+  geometry.hanging = V;
 }
 
 function hangRight({ supports, points, support, span, piece }: Geometry): void {

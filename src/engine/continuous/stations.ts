@@ -16,7 +16,7 @@ export class StationValues {
   deflection = new Float64Array(0);
 
   /** The ends of equal steps, the last exactly the length. */
-  placeEvenly(count: number, length: number): void {
+  placeEvenly({ length }: Geometry, count: number): void {
     this.fit(count);
     const step = length / (count - 1);
     for (let i = 0; i < count; i++) this.x[i] = i * step;

@@ -33,7 +33,8 @@ export class Sweep {
       const shear = leftShear + (left - right) * inverse;
       const psi = (to.risen - risen) * inverse - leftTurn - near * right - cross * left;
       if (j === 0) this.firstPsi = psi;
-      hold(from, piece[from.point]!, shear - this.V);
+      from.up = shear - this.V;
+      hold(from, piece[from.point]!);
       this.V = shear;
       this.M = right;
       this.psi = psi;
@@ -42,7 +43,8 @@ export class Sweep {
       from = to;
     }
     const { shear } = span[last]!;
-    hold(from, piece[from.point]!, shear - this.V);
+    from.up = shear - this.V;
+    hold(from, piece[from.point]!);
     if (last === 0) {
       this.psi = moved * from.turn - from.turnGive * from.couple;
       this.firstPsi = this.psi;
@@ -112,8 +114,8 @@ export class Sweep {
   }
 }
 
-/** The reactions of a support at which the shear rises by `step`. */
-function hold(support: Support, { force, couple }: Piece, step: number): void {
-  support.up = step + force;
+/** The reactions of a support: `up` is what the shear rises by there, so far. */
+function hold(support: Support, { force, couple }: Piece): void {
+  support.up += force;
   support.couple = support.held ? support.left - support.right - couple : 0;
 }

@@ -29,9 +29,9 @@ export const quartic = (c: Float64Array, s: number): number =>
 
 /**
  * The zero of a quartic c between stretch[0] and stretch[1], where its values are stretch[2] and stretch[3], of opposite
- * signs, and it is monotone: Halley's method from the chord, kept inside by bisection.
+ * signs, and it is monotone, into stretch[4]: Halley's method from the chord, kept inside by bisection.
  */
-export function monotoneZero(c: Float64Array, stretch: Float64Array): number {
+export function findMonotoneZero(c: Float64Array, stretch: Float64Array): void {
   const c0 = c[0]!;
   const c1 = c[1]!;
   const c2 = c[2]!;
@@ -43,15 +43,16 @@ export function monotoneZero(c: Float64Array, stretch: Float64Array): number {
   const last = STEP * to;
   const rises = low < 0;
   let s = from + ((to - from) * low) / (low - stretch[3]!);
-  for (let step = 0; step < STEPS; step++) {
+  for (let n = 0; n < STEPS; n++) {
     const value = c0 + s * (c1 + s * (c2 + s * (c3 + s * c4)));
     const slope = c1 + s * (2 * c2 + s * (3 * c3 + s * 4 * c4));
     const curve = c2 + s * (3 * c3 + s * 6 * c4); // half the second derivative
     if (value < 0 === rises) from = s;
     else to = s;
     const next = s - (value * slope) / (slope * slope - value * curve);
-    if (Math.abs(next - s) <= last) return next;
-    s = next > from && next < to ? next : (from + to) / 2; // also where the quotient is none
+    const step = Math.abs(next - s);
+    s = (next > from && next < to) || step <= last ? next : (from + to) / 2; // also where the quotient is none
+    if (step <= last) break;
   }
-  return s;
+  stretch[4] = s;
 }

@@ -3,10 +3,11 @@ import { sweepSignIns } from '@/features/account/sweep.server';
 import { BEAT, beat } from '@/features/admin/health.server';
 import { verifyAllChains } from '@/features/audit/audit.server';
 import { keepSending, readMailing } from '@/features/notice/mailer.server';
+import { proveIssued, resumeProofs, runProof } from '@/features/proof/prove.server';
 import { log } from '@/lib/log';
-import { type Queue, type Task, workQueue } from '@/services/queue';
+import { type Handlers, type Queue, workQueue } from '@/services/queue';
 
-const handlers: Readonly<Record<Task, () => Promise<void>>> = {
+const handlers: Handlers = {
   'sweep-sign-ins': async () => {
     log.info('swept sign-ins', await sweepSignIns());
   },
@@ -16,7 +17,14 @@ const handlers: Readonly<Record<Task, () => Promise<void>>> = {
       log.error('audit chain broken', { ...report });
     log.info('verified audit chains', { practices: reports.length });
   },
+  'prove-issued': proveIssued,
+  'run-proof': runProof,
 };
+
+/** Goes on with what a worker that is gone left behind. */
+async function resumeRuns(): Promise<void> {
+  await resumeProofs();
+}
 
 /** Works the queue, and gives a sign of life: late by one database failover, never dead by it. */
 async function work(): Promise<Queue> {
@@ -33,6 +41,7 @@ async function work(): Promise<Queue> {
     BEAT.every * 1000,
   );
   const mailer = mailing && keepSending(mailing);
+  resumeRuns().catch((error: unknown) => log.error('runs not resumed', { error }));
   process.send?.('ready');
   return {
     stop: async () => {

@@ -104,7 +104,13 @@ describe('the role that web and worker sign in with', () => {
     await sender.start();
     const sweep = vi.fn(async () => undefined);
     const verify = vi.fn(() => Promise.reject(new Error('the chain cannot be read')));
-    const handlers = { 'sweep-sign-ins': sweep, 'verify-audit-chains': verify };
+    const idle = async () => undefined;
+    const handlers = {
+      'sweep-sign-ins': sweep,
+      'verify-audit-chains': verify,
+      'prove-issued': idle,
+      'run-proof': idle,
+    };
     const queue = await workQueue(appUrl, handlers, () => undefined);
     await sender.send('sweep-sign-ins', {});
     const id = await sender.send('verify-audit-chains', {});

@@ -1,3 +1,4 @@
+import { proveIssued } from '@/features/proof/prove.server';
 import { seedCriteria } from './criteria';
 import { seedMembers } from './members';
 import { findDemoPeople, foundDemoPractice } from './people';
@@ -16,5 +17,7 @@ export async function seedDemo(): Promise<boolean> {
   await seedCriteria(people);
   await seedTemplates(people);
   await seedMembers(people);
+  // The worker proves over the whole parameter box what was issued on its proof cases.
+  await proveIssued();
   return true;
 }

@@ -14,6 +14,7 @@ const TABLE: Record<Action, [subject: Subject, allowed: string]> = {
   'library.edit': [{ authorId: ME }, 'engineer librarian'],
   'library.submit': [{ authorId: ME }, 'engineer librarian'],
   'library.review': [{ authorId: OTHER }, 'checker librarian'],
+  'library.prove': [{}, 'engineer checker librarian'],
   'library.withdraw': [{}, 'librarian principal'],
   'library.comment': [{}, 'engineer checker librarian principal'],
   'library.confirm': [{}, 'librarian'],

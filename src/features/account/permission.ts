@@ -63,6 +63,10 @@ const RULES = {
     'A document is reviewed and issued by a checker or a librarian who did not write or change it.',
     grant(['checker', 'librarian'], isNotAuthor),
   ),
+  'library.prove': rule(
+    'Proofs and impacts are asked for by the people who write and review the library.',
+    grant(['engineer', 'checker', 'librarian']),
+  ),
   'library.withdraw': rule(
     'A document is withdrawn by a librarian or a principal.',
     grant(['librarian', 'principal']),

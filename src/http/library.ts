@@ -6,6 +6,7 @@ import { DOCUMENT_KINDS, type DocumentKind, REVISION_STATES } from '@/features/r
 import type { Moved, StepRequest } from '@/features/review/review.server';
 import { takeStepAt } from '@/features/review/review.server';
 import { notFound } from '@/lib/app-error';
+import { ifMatch } from './etag';
 import { numberParam } from './params';
 
 type Params = APIContext['params'];
@@ -37,9 +38,13 @@ export const StepView = z.strictObject({
   recall: z.uuid().nullable(),
 });
 
-/** Takes a step of the revision in the address. */
-export async function takeStepHere(params: Params, user: User, request: StepRequest) {
-  const { kind, slug, number } = revisionKey(params);
-  const { state, recallId }: Moved = await takeStepAt(user, { kind, slug, number }, request);
+/**
+ * Takes a step of the revision in the address. With If-Match it is the version that was read, or 412: what is issued is
+ * what was reviewed, though it was returned and sent again in between.
+ */
+export async function takeStepHere(context: APIContext, user: User, step: StepRequest) {
+  const { kind, slug, number } = revisionKey(context.params);
+  const version = context.request.headers.has('if-match') ? ifMatch(context) : null;
+  const { state, recallId }: Moved = await takeStepAt(user, { kind, slug, number }, step, version);
   return { kind, slug, revision: number, state, recall: recallId } satisfies z.output<typeof StepView>;
 }

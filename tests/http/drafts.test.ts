@@ -272,6 +272,12 @@ describe('on its way to issue', () => {
     await proveRevision(librarian, row?.['id'], passed);
   };
 
+  const resolveAll = async (slug: string, by: By) => {
+    const url = `/api/v1/library/template/${slug}/revisions/1/comments`;
+    const { json } = await ask('GET', url, { token: tokens[by] });
+    for (const { id } of json.items) await ask('PUT', `${url}/${id}/resolved`, { token: tokens[by] });
+  };
+
   test('a draft that says too little or has faults is not sent to review, and every reason is named', async () => {
     await begin('unready');
     const refused = await step('unready', 1, 'submit', 'librarian');
@@ -335,6 +341,24 @@ describe('on its way to issue', () => {
       reviewer: 'Person 3',
       summary: 'Said better.',
     });
+  });
+
+  test('what is issued is the version that was reviewed, or nothing', async () => {
+    const document = await ready('reviewed', 'Reviewed 1');
+    await step('reviewed', 1, 'submit', 'librarian');
+    const { headers } = await read('reviewed', 1, 'checker');
+    await step('reviewed', 1, 'return', 'other', { comment: 'Say which table.' });
+    await save('reviewed', 1, 1, { document: { ...document, summary: 'Not seen.' }, ...CHANGE });
+    await step('reviewed', 1, 'submit', 'librarian');
+    await prove('reviewed');
+    const issue = (etag: string) =>
+      ask('POST', '/api/v1/templates/reviewed/revisions/1/issue', {
+        token: tokens.checker,
+        headers: { 'if-match': etag },
+      });
+    expect((await issue(headers.get('etag') ?? '')).status).toBe(412);
+    await resolveAll('reviewed', 'other');
+    expect((await issue('"2"')).status).toBe(200);
   });
 
   test('neither its author nor whoever changed it issues it', async () => {

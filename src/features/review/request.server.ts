@@ -20,12 +20,19 @@ import {
   type RequestView,
 } from './request';
 import type { RequestState } from './review';
-import { type Actor, type DocumentKey, findDocument } from './rows.server';
+import { type Actor, type DocumentKey, type DocumentRow, findDocument } from './rows.server';
 
 const raiser = aliasedTable(person, 'raiser');
 const handler = aliasedTable(person, 'handler');
 
-const select = (tx: Tx, where: SQL | undefined, limit: number) =>
+interface Selected {
+  readonly row: typeof request.$inferSelect;
+  readonly document: Pick<DocumentRow, 'kind' | 'slug' | 'reference' | 'name'> | null;
+  readonly raisedBy: string;
+  readonly handledBy: string | null;
+}
+
+const select = (tx: Tx, where: SQL | undefined, limit: number): Promise<Selected[]> =>
   tx
     .select({
       row: request,
@@ -44,9 +51,8 @@ const select = (tx: Tx, where: SQL | undefined, limit: number) =>
     .leftJoin(document, and(eq(document.practiceId, request.practiceId), eq(document.id, request.documentId)))
     .where(where)
     .orderBy(desc(request.number))
-    .limit(limit);
-
-type Selected = Awaited<ReturnType<typeof select>>[number];
+    .limit(limit)
+    .execute();
 
 /** Anybody may ask for a template or report a fault, from any screen. The librarians are told. */
 export function raiseRequest(actor: Actor, given: NewRequest): Promise<RequestView> {

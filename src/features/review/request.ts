@@ -78,6 +78,5 @@ export const requestQuery = {
   kind: z.enum(REQUEST_KINDS).optional(),
   mine: z.stringbool().default(false),
 };
-export type RequestQuery = {
-  readonly [K in keyof typeof requestQuery]: z.output<(typeof requestQuery)[K]>;
-};
+const query = z.strictObject(requestQuery);
+export type RequestQuery = z.output<typeof query>;

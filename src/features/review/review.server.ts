@@ -5,7 +5,7 @@ import { withPractice } from '@/db/tenancy';
 import { ENGINE_VERSION } from '@/engine/version';
 import { requirePermission } from '@/features/account/permission';
 import { recordAudit } from '@/features/audit/audit.server';
-import { AppError, type Fault, invalid } from '@/lib/app-error';
+import { AppError, type Fault, invalid, stale } from '@/lib/app-error';
 import { fingerprint } from '@/lib/fingerprint';
 import { announce, announceToDerived } from './announce.server';
 import { insertComment, openComments } from './comment.server';
@@ -114,11 +114,18 @@ export const takeStep = (
     step(tx, actor, await requireRevisionById(tx, actor.practiceId, revisionId), request, manner),
   );
 
-/** The same for a revision by its address. */
-export const takeStepAt = (actor: Actor, key: RevisionKey, request: StepRequest): Promise<Moved> =>
-  withPractice(actor, async (tx) =>
-    step(tx, actor, await requireRevision(tx, actor.practiceId, key), request),
-  );
+/** The same for a revision by its address; 412 where it is not the version that was read. */
+export const takeStepAt = (
+  actor: Actor,
+  key: RevisionKey,
+  request: StepRequest,
+  version: number | null,
+): Promise<Moved> =>
+  withPractice(actor, async (tx) => {
+    const current = await requireRevision(tx, actor.practiceId, key);
+    if (version !== null && version !== current.version) throw stale();
+    return step(tx, actor, current, request);
+  });
 
 async function step(
   tx: Tx,
@@ -178,8 +185,11 @@ async function move(tx: Tx, actor: Actor, current: RevisionRow, request: StepReq
       ),
     )
     .returning(MOVED);
-  if (!moved) throw wrongState(request, current);
-  return moved;
+  if (moved) return moved;
+  const now = await requireRevisionById(tx, actor.practiceId, current.id);
+  throw isFrom(request.step, now.state)
+    ? new AppError('conflict', `Revision ${now.number} was saved at this moment. Read it again first.`)
+    : wrongState(request, now);
 }
 
 const MOVED = {

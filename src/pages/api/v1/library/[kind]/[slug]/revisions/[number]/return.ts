@@ -9,5 +9,5 @@ export const POST = endpoint(
     body: ReturnStep,
     answer: StepView,
   },
-  ({ params }, { user, body }) => takeStepHere(params, user, { step: 'return', ...body }),
+  (context, { user, body }) => takeStepHere(context, user, { step: 'return', ...body }),
 );

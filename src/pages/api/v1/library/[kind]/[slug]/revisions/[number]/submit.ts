@@ -8,5 +8,5 @@ export const POST = endpoint(
       'Refused while the draft has faults, or does not say what changes, of which class and with what consequence.',
     answer: StepView,
   },
-  ({ params }, { user }) => takeStepHere(params, user, { step: 'submit' }),
+  (context, { user }) => takeStepHere(context, user, { step: 'submit' }),
 );

@@ -10,5 +10,5 @@ export const POST = endpoint(
     body: WithdrawStep,
     answer: StepView,
   },
-  ({ params }, { user, body }) => takeStepHere(params, user, { step: 'withdraw', ...body }),
+  (context, { user, body }) => takeStepHere(context, user, { step: 'withdraw', ...body }),
 );

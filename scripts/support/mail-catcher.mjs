@@ -71,10 +71,13 @@ const toMessage = (mail, envelope, id) => ({
   id,
   at: new Date().toISOString(),
   messageId: mail.messageId ?? '',
-  from: mail.from?.text ?? '',
-  to: mail.to?.text ?? '',
+  from: plain(mail.from),
+  to: plain(mail.to),
   recipients: envelope.rcptTo.map(({ address }) => address),
   subject: mail.subject ?? '',
   text: mail.text ?? '',
   html: mail.html || '',
 });
+
+/** Name and address, without the quotation marks of the header. */
+const plain = (addresses) => (addresses?.text ?? '').replaceAll('"', '');

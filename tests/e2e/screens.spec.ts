@@ -20,6 +20,7 @@ const SCREENS = {
   'new member': '/jobs/new-member?template=simple-span-uniform',
   member: '/jobs/Q-2417/members/LF4',
   account: '/account',
+  notices: '/notices',
   help: '/help/units',
 };
 const LOOKS = [

@@ -4,11 +4,12 @@ import type { NoticeView } from './notice';
 
 /** Notices that the bell shows; the rest is on their page. */
 const SHOWN = 6;
-const day = new Intl.DateTimeFormat('en-GB', {
+const moment = new Intl.DateTimeFormat('en-GB', {
   day: 'numeric',
   month: 'short',
   hour: '2-digit',
   minute: '2-digit',
+  timeZone: 'UTC',
 });
 
 function part<E extends Element>(bell: Element, name: string): E {
@@ -52,7 +53,7 @@ function toEntry(bell: Element, { title, detail, href, created_at, read_at }: No
   };
   put('title', title);
   put('detail', detail);
-  put('when', `${day.format(new Date(created_at))}${read_at === null ? ', unread' : ''}`);
+  put('when', `${moment.format(new Date(created_at))} UTC${read_at === null ? ', unread' : ''}`);
   entry.querySelector('a')?.setAttribute('href', href);
   entry.querySelector('li')?.toggleAttribute('data-unread', read_at === null);
   return entry;

@@ -70,15 +70,13 @@ function subjectOf(items: readonly MailItem[], mode: MailMode): string {
   return SUBJECTS[first.kind](first.content.reference ?? 'a library document');
 }
 
-const RECALL_RULE = 'A recall always comes at once and cannot be turned off.';
-
+/** Who sends it, and what can be done about it. */
 const footOf = ({ mode, practice }: Circumstances, items: readonly MailItem[]): string =>
-  [
-    `Sent to you by ${practice}’s Putlog, ${mode === 'digest' ? 'once a day' : 'at once'}.`,
-    items.some(({ kind }) => kind === 'recall')
-      ? RECALL_RULE
-      : 'Account says which e-mails you get, and when.',
-  ].join(' ');
+  items.some(({ kind }) => kind === 'recall')
+    ? `Sent to you by ${practice}’s Putlog. A recall always comes at once and cannot be turned off. Other e-mails:`
+    : `Sent to you by ${practice}’s Putlog, ${mode === 'digest' ? 'once a day' : 'at once'}. Choose your e-mails:`;
+
+const choicesAt = ({ origin }: Circumstances): string => `${origin}${paths.account}#e-mail`;
 
 function toText(items: readonly MailItem[], circumstances: Circumstances): string {
   const blocks = items.map(({ kind, content: { title, detail, facts = [], href } }) =>
@@ -91,7 +89,7 @@ function toText(items: readonly MailItem[], circumstances: Circumstances): strin
       circumstances.origin + href,
     ].join('\n'),
   );
-  return `${[...blocks, `--\n${footOf(circumstances, items)}\n${circumstances.origin}${paths.account}`].join('\n\n')}\n`;
+  return `${[...blocks, `--\n${footOf(circumstances, items)}\n${choicesAt(circumstances)}`].join('\n\n')}\n`;
 }
 
 const ENTITIES: Readonly<Record<string, string>> = {
@@ -129,7 +127,7 @@ function toHtml(subject: string, items: readonly MailItem[], circumstances: Circ
     ),
     ...items.map((item) => toRow(item, origin)),
     cell(
-      `${encode(footOf(circumstances, items))} <a href="${encode(origin + paths.account)}" ${style(`color:${COLOUR.ink2}`)}>Account</a>`,
+      `${encode(footOf(circumstances, items))} <a href="${encode(choicesAt(circumstances))}" ${style(`color:${COLOUR.ink2}`)}>Account</a>`,
       `color:${COLOUR.ink2}`,
       'font-size:12px',
       'line-height:16px',

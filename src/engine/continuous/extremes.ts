@@ -152,7 +152,7 @@ export class ExtremeFinder {
     const t2 = (b * V) / 2;
     const t3 = b * start * -SIXTH;
     let count = 0;
-    if (t1 * last < 0 || t1 * crest < 0) {
+    if (t1 * crest < 0 || crest * last < 0) {
       const root = Math.sqrt(t2 * t2 - 3 * t1 * t3);
       const q = t2 < 0 ? root - t2 : -t2 - root; // no difference of nearly equal numbers
       const one = t1 / q;

@@ -30,13 +30,14 @@ export function add(...summands: readonly Expression[]): Expression {
   const found = new Map<string, Term>();
   for (const term of terms) {
     const alike = found.get(term.key);
-    found.set(term.key, alike ? { ...alike, coefficient: sum(alike.coefficient, term.coefficient) } : term);
+    const { coefficient, powers, factors } = alike ?? term;
+    found.set(term.key, alike ? termOf(sum(coefficient, term.coefficient), powers, factors) : term);
   }
   return [...found.values()].filter(({ coefficient }) => coefficient.n !== 0);
 }
 
 export const negate = (a: Expression): Expression =>
-  a.map((term) => ({ ...term, coefficient: product(term.coefficient, rational(-1)) }));
+  a.map(({ coefficient, powers, factors }) => termOf(product(coefficient, rational(-1)), powers, factors));
 
 export const subtract = (a: Expression, b: Expression): Expression => add(a, negate(b));
 
@@ -182,9 +183,20 @@ function joined(factors: readonly Factor[]): Factor[] {
 
 const plain = ({ coefficient, powers }: Monomial): Term => termOf(coefficient, powers, []);
 
+/** Its key is made when it is first asked for: most terms are never compared. */
 function termOf(coefficient: Rational, powers: Powers, factors: readonly Factor[]): Term {
-  const factorsKey = factors.map(({ key, power: p }) => `(${key})^${p}`).sort();
-  return { coefficient, powers, factors, key: [powersKey(powers), ...factorsKey].join('*') };
+  let key: string | undefined;
+  return {
+    coefficient,
+    powers,
+    factors,
+    get key() {
+      key ??= [powersKey(powers), ...factors.map((factor) => `(${factor.key})^${factor.power}`).sort()].join(
+        '*',
+      );
+      return key;
+    },
+  };
 }
 
 function factorOf(monomials: readonly Monomial[], p: number): Factor {

@@ -140,23 +140,23 @@ const givenSprings = (beam: NamedBeam, loads: readonly NamedLoad[]): TermsAt =>
 
 function springsOf(beam: NamedBeam, loads: (piece: Piece) => NamedLoad[]): TermsAt {
   return (piece, place, movement) => {
+    if (!isSprung(piece)) return [];
     const carried = loads(piece).map((load) => supportForces(piece.released, load));
     const together: SupportForces = {
       forces: [
         add(...carried.map(({ forces: [first] }) => first)),
-        add(...carried.map(({ forces: [, s] }) => s)),
+        add(...carried.map(({ forces: [, second] }) => second)),
       ],
       couple: add(...carried.map(({ couple }) => couple)),
     };
-    return movementTerms(
-      piece.released,
-      yieldingOn(piece, together),
-      place,
-      movement,
-      beam.setting(piece.ei),
-    );
+    const movements = yieldingOn(piece, together);
+    return movementTerms(piece.released, movements, place, movement, beam.setting(piece.ei));
   };
 }
+
+const isSprung = ({ vertical, turning }: Piece): boolean =>
+  vertical.some(({ support }) => support.vertical.kind === 'spring') ||
+  turning?.support.rotation.kind === 'spring';
 
 const shearUnder = (beam: NamedBeam, loads: readonly NamedLoad[]): TermsAt =>
   shearOf(beam, (piece) => loadsOn(beam, piece, loads));

@@ -1,12 +1,15 @@
-import { multiply, simplest, subtract, symbol } from '../chart/index';
+import { type Expression, multiply, simplest, subtract, symbol } from '../chart/index';
 import type { Redundant } from '../model/index';
 import { solveStiffness } from '../stiffness/index';
-import { expressionOf } from './movement';
-import { gapKind, movementsOf } from './movements';
+import { chartedFlexibility, chartedGap } from './charted';
+import { imposedOf } from './coefficients';
+import { gapKind } from './movements';
+import type { NamedBeam } from './named-beam';
+import { piecesOf } from './pieces';
 import { calculate } from './step';
 import type { DerivationStep } from './types';
-import { acts, flexibilityTex, gapTex, type Unknown } from './unknown';
-import { type Worked, work } from './values';
+import { acts, flexibilityTex, gapTex, type Unknown, unknownsOf } from './unknown';
+import type { Worked } from './values';
 import { placeOf, sentence } from './words';
 
 /**
@@ -14,50 +17,65 @@ import { placeOf, sentence } from './words';
  * the value found for it; it must be what its support allows. Else the first redundant by the stiffness method.
  */
 export function checkStep(worked: Worked): DerivationStep[] {
-  if (worked.unknowns.length === 0) return [];
-  if (worked.unknowns.length > 1) return [byStiffness(worked)];
-  const others = worked.solution.forceMethod.eligible.filter(
-    (other) => JSON.stringify(other) !== JSON.stringify(worked.unknowns[0]!.redundant),
-  );
-  const found = others.map((other) => byOther(worked, other)).find((step) => step !== null);
-  return [found ?? byStiffness(worked)];
+  const { unknowns, solution } = worked;
+  if (unknowns.length === 0) return [];
+  if (unknowns.length > 1) return [byStiffness(worked)];
+  for (const other of solution.forceMethod.eligible) {
+    if (JSON.stringify(other) === JSON.stringify(unknowns[0]!.redundant)) continue;
+    const step = byOther(worked, other);
+    if (step) return [step];
+  }
+  return [byStiffness(worked)];
 }
 
 /** A check with more terms than this convinces nobody. */
 const MOST_TERMS = 5;
 
 /** θ_A = θ_A0 − M_A f_AA, with the charts' terms; null where they do not cover it. */
-function byOther(worked: Worked, other: Redundant): DerivationStep | null {
-  const { beam } = worked;
-  const second = work(beam, [other]);
-  const unknown = second.unknowns[0]!;
-  if (unknown.kind === 'internal' || !beam.letters.has(unknown.tex) || isSprung(unknown)) return null;
-  const movements = movementsOf(second);
-  const [gap, flexibility] = [expressionOf(movements.gap(0)), expressionOf(movements.flexibility(0, 0))];
-  if (!gap || !flexibility) return null;
-  const expression = subtract(simplest(gap), multiply(symbol(unknown.tex), simplest(flexibility)));
-  if (expression.length > MOST_TERMS) return null;
+function byOther({ beam }: Worked, other: Redundant): DerivationStep | null {
+  const { letters } = beam;
+  const unknown = unknownsOf(beam, [other])[0]!;
+  if (unknown.kind === 'internal' || !letters.has(unknown.tex) || isSprung(unknown)) return null;
+  const movement = movementOf(beam, unknown);
+  if (!movement || movement.length > MOST_TERMS) return null;
+  const imposed = imposedOf(unknown);
+  const value = imposed ? letters.of(imposed) : 0;
+  if (Math.abs(letters.of(movement) - value) > SAME * letters.largest(movement)) return null;
   const letter = gapTex(unknown).replace('0}', '}');
   const left = `${letter}=${gapTex(unknown)}-${unknown.tex}${flexibilityTex(unknown, unknown)}`;
-  return calculate(beam.letters, {
+  return calculate(letters, {
     id: 'check',
     title: `Check: ${unknown.kind === 'reaction' ? 'deflection' : 'slope'} ${placeOf(unknown)} from the other redundant`,
     left,
-    expression,
-    value: second.imposed[0]!,
+    expression: movement,
+    value,
     kind: gapKind(unknown),
     scale: 'base',
-    extra: { note: expected(second, unknown) },
+    extra: { note: expected(unknown, value) },
   });
+}
+
+/** Closed forms may differ from what they must be by rounding alone. */
+const SAME = 1e-9;
+
+/** What moves at the other redundant by the charts, with the value that was found for it. */
+function movementOf(beam: NamedBeam, unknown: Unknown): Expression | null {
+  const pieces = piecesOf(beam, [unknown]);
+  if (!pieces) return null;
+  const gaps = [...chartedGap(beam, pieces, unknown).values()];
+  const flexibility = chartedFlexibility(beam, pieces, unknown, unknown);
+  if (!gaps.every((part) => part !== null) || !flexibility) return null;
+  const [gap, own] = [gaps, flexibility].map((parts) => simplest(parts.flatMap(({ value }) => value)));
+  return subtract(gap!, multiply(symbol(unknown.tex), own!));
 }
 
 /** A spring's own end moves: nothing is known of it beforehand. */
 const isSprung = ({ kind, support }: Unknown): boolean =>
   support?.support[kind === 'reaction' ? 'vertical' : 'rotation'].kind === 'spring';
 
-function expected({ imposed }: Worked, unknown: Unknown): string {
+function expected(unknown: Unknown, imposed: number): string {
   const word = unknown.kind === 'reaction' ? 'move' : 'turn';
-  return imposed[0] === 0
+  return imposed === 0
     ? `${sentence(placeOf(unknown))} the support does not ${word}, and neither does the beam.`
     : `${sentence(placeOf(unknown))} the beam moves as its support does.`;
 }

@@ -4,6 +4,7 @@ import { BEAT, beat } from '@/features/admin/health.server';
 import { verifyAllChains } from '@/features/audit/audit.server';
 import { keepSending, readMailing } from '@/features/notice/mailer.server';
 import { proveIssued, resumeProofs, runProof } from '@/features/proof/prove.server';
+import { remindOfReviews } from '@/features/review/remind.server';
 import { log } from '@/lib/log';
 import { type Handlers, type Queue, workQueue } from '@/services/queue';
 
@@ -18,6 +19,9 @@ const handlers: Handlers = {
     log.info('verified audit chains', { practices: reports.length });
   },
   'prove-issued': proveIssued,
+  'remind-of-reviews': async () => {
+    log.info('reminded of reviews', await remindOfReviews());
+  },
   'run-proof': runProof,
 };
 

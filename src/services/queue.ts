@@ -6,6 +6,7 @@ const SCHEDULE = {
   'sweep-sign-ins': '7 * * * *',
   'verify-audit-chains': '23 2 * * *',
   'prove-issued': '41 * * * *',
+  'remind-of-reviews': '11 5 * * *',
 } as const;
 
 /** A run of the worker's for a practice; its row says the rest. */

@@ -109,6 +109,7 @@ describe('the role that web and worker sign in with', () => {
       'sweep-sign-ins': sweep,
       'verify-audit-chains': verify,
       'prove-issued': idle,
+      'remind-of-reviews': idle,
       'run-proof': idle,
     };
     const queue = await workQueue(appUrl, handlers, () => undefined);

@@ -8,7 +8,6 @@ export default defineConfig({
     include: [
       'src/engine/{beam,stiffness,chart,proof}/*.test.ts',
       'tests/published/{exact-beams,solve-examples,beam-tables,chart}.test.ts',
-      'tests/properties/beam-*.test.ts',
     ],
     setupFiles: 'tests/support/seed.ts',
   },

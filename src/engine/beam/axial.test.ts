@@ -17,6 +17,7 @@ describe('axialScope', () => {
     });
     expect(axialScope(0.1001 * critical, 5e6, 1)).toMatchObject({ inScope: false });
     expect(axialScope(0.4 * critical, 5e6, 0.5).ratio).toBeCloseTo(0.1, 12);
+    expect(axialScope(0.05, 0.5, 1).critical).toBeCloseTo(Math.PI ** 2 / 2, 12);
   });
 
   test('is in scope under any tension', () => {

@@ -62,6 +62,10 @@ describe('deflectionFrom', () => {
     expect(evaluate(line, 0)[0]).toBeCloseTo(tip + 0.1, 13);
   });
 
+  test('from a support adds no break of its own', () => {
+    expect(from({ kind: 'support', support: 1 }).breaks).toEqual(sinking.solution.diagrams.deflection.breaks);
+  });
+
   test('has no chord on one support', () => {
     const { beam, solution } = solved({ length: 2, ei: 1, supports: [{ at: 0, kind: 'fixed' }] });
     expect(deflectionFrom(beam, solution.diagrams.deflection, { kind: 'chord' })).toBeNull();

@@ -292,9 +292,10 @@ describe('stations', () => {
   });
 
   test('within 1e-12 of the length of a point have the two sides of that point', () => {
-    for (const x of [2.1, 2.1 - 2e-12, 2.1 + 2e-12]) {
+    for (const x of [2.1, 2.1 - 2.9e-12, 2.1 + 2.9e-12]) {
       expect(stationsAt(solution, [x])[0]).toMatchObject({ x, shear: [near(3), near(-7)] });
     }
+    expect(stationsAt(solution, [2.1 + 3.1e-12])[0]!.shear).toEqual([near(-7), near(-7)]);
     expect(stationsAt(solution, [2.1 + 1e-9])[0]!.shear).toEqual([near(-7), near(-7)]);
   });
 

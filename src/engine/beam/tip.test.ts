@@ -64,6 +64,20 @@ describe('tipParts', () => {
     expect(tip!.rotation).toBeCloseTo(-a * ((P * L * a) / (3 * EI) + (P * a) / (L * GA)), 12);
   });
 
+  test('of a force at the tip are the same where the span is no longer than a unit', () => {
+    const [tip] = parts({
+      length: 0.9,
+      ei: EI,
+      supports: [
+        { at: 0, kind: 'pin' },
+        { at: 0.5, kind: 'roller' },
+      ],
+      loads: [{ kind: 'point', at: 0.9, p: P }],
+    });
+    expect(tip!.bending).toBeCloseTo((-P * 0.4 ** 3) / (3 * EI), 15);
+    expect(tip!.rotation).toBeCloseTo((-P * 0.5 * 0.4 ** 2) / (3 * EI), 15);
+  });
+
   test('of a cantilever under a free curvature are its bending alone', () => {
     const [tip] = parts({
       length: 3,

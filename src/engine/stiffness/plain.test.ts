@@ -1,0 +1,132 @@
+import { describe, expect, test } from 'vitest';
+import { exactBeams } from '../../../tests/support/exact-beams';
+import { stableBeam } from '../../../tests/support/stable-beam';
+import type { Beam, Restraint } from '../model/index';
+import { PlainStiffness } from './index';
+import { PlainBand } from './plain-band';
+
+const unhinged = exactBeams()
+  .map(({ name, document }) => ({ name, beam: stableBeam(document) }))
+  .filter(({ beam }) => beam.hinges.length === 0);
+
+/** Reactions, and V, M, ψ and v inside the ends of every element. */
+const answer = ({ vertical, moment, elements, element }: PlainStiffness, { supports }: Beam): number[] => [
+  ...vertical.slice(0, supports.length),
+  ...moment.slice(0, supports.length),
+  ...element.slice(0, elements).flatMap(({ left, right }) => [...left, ...right]),
+];
+
+describe('PlainStiffness', () => {
+  test.each(unhinged)('adds up loads and movements: $name', ({ beam }) => {
+    const plain = new PlainStiffness();
+    plain.take(beam);
+    const solved = (...given: Parameters<PlainStiffness['solve']>) => {
+      plain.solve(...given);
+      return answer(plain, beam);
+    };
+    const whole = solved();
+    const parts = [solved([], true), ...beam.loads.map((load) => solved([load], false))];
+    const largest = Math.max(...parts.flat().map(Math.abs));
+    whole.forEach((value, i) => {
+      const sum = parts.reduce((total, part) => total + part[i]!, 0);
+      expect(Math.abs(sum - value)).toBeLessThanOrEqual(1e-12 * largest);
+    });
+  });
+
+  test('answers alike whatever it solved before', () => {
+    const used = new PlainStiffness();
+    for (const { beam } of unhinged) {
+      const fresh = new PlainStiffness();
+      for (const plain of [used, fresh]) {
+        plain.take(beam);
+        plain.solve();
+      }
+      expect(answer(used, beam)).toEqual(answer(fresh, beam));
+    }
+  });
+
+  test('takes no beam with hinges, and no mechanism', () => {
+    const held: Restraint = { kind: 'rigid', movement: 0 };
+    const pinned = { kind: 'pin', vertical: held, rotation: { kind: 'free' }, horizontal: true } as const;
+    const beam: Beam = {
+      length: 4,
+      segments: [{ from: 0, to: 4, ei: 1e7, ga: null }],
+      supports: [
+        { ...pinned, at: 0 },
+        { ...pinned, at: 4 },
+      ],
+      hinges: [],
+      loads: [],
+      degree: 0,
+    };
+    const plain = new PlainStiffness();
+    expect(plain.take(beam)).toBe(true);
+    expect(plain.take({ ...beam, hinges: [2] })).toBe(false);
+    expect(plain.take({ ...beam, supports: beam.supports.slice(1) })).toBe(false);
+  });
+});
+
+describe('PlainBand', () => {
+  /** The second difference on n points, held at both ends: 2 on the diagonal, −1 beside it. */
+  const string = (n: number, last = 2) => {
+    const band = new PlainBand();
+    band.clear(n);
+    for (let i = 0; i < n; i++) band.couple(i, i, i === n - 1 ? last : 2);
+    for (let i = 1; i < n; i++) band.couple(i % 2 ? i : i - 1, i % 2 ? i - 1 : i, -1);
+    return band;
+  };
+
+  test.each([1, 2, 3, 4, 5, 16, 17, 40])(
+    'of a string of %i points under a unit load has its parabola',
+    (n) => {
+      const band = string(n);
+      expect(band.factorise()).toBe(true);
+      const b = new Float64Array(n).fill(1);
+      band.solve(b);
+      // −u″ = 1 with u = 0 at 0 and n + 1: i (n + 1 − i)/2
+      b.forEach((value, k) => {
+        expect(Math.abs(value - ((k + 1) * (n - k)) / 2)).toBeLessThan(1e-11 * n);
+      });
+    },
+  );
+
+  test('cannot factorise what is not above rounding: 2⁻⁴⁰ is, 0 is not', () => {
+    // The pivots of the string are (i + 1)/i; the last is what is left of its diagonal, 1/n more than a mechanism's.
+    const n = 5;
+    expect(string(n, 1 - 1 / n + 2 ** -40).factorise()).toBe(true);
+    expect(string(n, 1 - 1 / n).factorise()).toBe(false);
+    expect(string(n, 1 - 1 / n - 2 ** -40).factorise()).toBe(false);
+    expect(string(n, Number.NaN).factorise()).toBe(false);
+  });
+
+  test('leaves out the rows of prescribed movements', () => {
+    const band = new PlainBand();
+    band.clear(1);
+    band.couple(0, 0, 4);
+    band.couple(-1, 0, 9);
+    band.couple(0, -1, 9);
+    band.couple(-1, -1, 9);
+    expect(band.factorise()).toBe(true);
+    const b = new Float64Array([8]);
+    band.solve(b);
+    expect([...b]).toEqual([2]);
+  });
+
+  test('of a full band of three solves what is multiplied', () => {
+    const n = 9;
+    const entry = (i: number, j: number) => (i === j ? 10 + i : Math.abs(i - j) <= 3 ? 1 / (i + j + 1) : 0);
+    const band = new PlainBand();
+    for (let round = 0; round < 2; round++) {
+      band.clear(n);
+      for (let i = 0; i < n; i++)
+        for (let j = Math.max(0, i - 3); j <= i; j++) band.couple(j, i, entry(i, j));
+      expect(band.factorise()).toBe(true);
+      const x = Array.from({ length: n }, (_, i) => (i % 2 ? -i : i + 1));
+      const b = Float64Array.from(x, (_, i) => x.reduce((sum, xj, j) => sum + entry(i, j) * xj, 0));
+      band.solve(b);
+      b.forEach((value, i) => {
+        expect(Math.abs(value - x[i]!)).toBeLessThan(1e-13);
+      });
+    }
+  });
+});

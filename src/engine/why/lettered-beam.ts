@@ -146,7 +146,9 @@ export class LetteredBeam {
     const each = of.map((i) => this.size(this.loads[i]!, which));
     const [first] = each;
     if (each.length === 1 && first) return first;
-    const names = each.map(({ symbol }, k) => symbol || `w_{${k + 1}}`);
+    const symbols = each.map(({ symbol }) => symbol);
+    const areTold = !symbols.includes('') && new Set(symbols).size === symbols.length;
+    const names = areTold ? symbols : each.map((_, k) => `w_{${k + 1}}`);
     return formula(
       {
         label: 'Load, all groups',

@@ -14,7 +14,7 @@ import {
   type Tree,
   within,
 } from '../template/index';
-import { constant, formula, type Head, leaf, Once } from './node';
+import { constant, formula, type Head, leaf, Once, renamed } from './node';
 import { SectionTraces } from './section';
 import { positive, total, withNames } from './tree';
 import type { Measure, Part, Subject, Trace } from './types';
@@ -122,8 +122,10 @@ export class ParameterTraces {
       return this.typed(parameter, Number(given), null);
     const parts = typeof given === 'object' ? given : { [own]: Number(given) };
     const groups = Object.keys(parts);
+    const [only] = groups;
+    if (only !== undefined && groups.length === 1 && (group ?? only) === only)
+      return renamed(this.typed(parameter, parts[only]!, only), { symbol: tex });
     if (group !== null) return this.typed(parameter, parts[group] ?? 0, group);
-    if (groups.length === 1) return this.typed(parameter, parts[groups[0]!]!, groups[0]!);
     const value = groups.reduce((sum, one) => sum + parts[one]!, 0);
     return formula(
       { label: `${name}, all groups`, symbol: tex, value, measure: dimension },

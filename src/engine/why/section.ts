@@ -102,10 +102,9 @@ export class SectionTraces {
       return this.ofMaterial(label, symbol, this.strength().bending, 'stress');
     }
     const thickness = governingThickness(dimensions);
-    const upTo = material.strength.find((band) => thickness <= band.upTo)?.upTo ?? Number.POSITIVE_INFINITY;
-    const label = Number.isFinite(upTo)
-      ? `Yield strength up to ${Math.round(upTo * 1000)} mm`
-      : 'Yield strength';
+    const band = material.strength.find(({ upTo }) => thickness <= upTo);
+    const limit = band && Number.isFinite(band.upTo) ? ` up to ${Math.round(band.upTo * 1000)} mm` : '';
+    const label = `Yield strength${limit}`;
     return this.ofMaterial(label, 'f_y', this.strength().bending, 'stress');
   }
 
@@ -127,12 +126,12 @@ export class SectionTraces {
     );
   }
 
-  /** A section without a strength is refused before. */
+  /** Fails with RangeError for a thickness that the material has no strength for. */
   private strength(): { bending: number; shear: number } {
     const { material, dimensions } = this.section;
-    return (
-      elasticStrength(material, governingThickness(dimensions)) ?? { bending: Number.NaN, shear: Number.NaN }
-    );
+    const found = elasticStrength(material, governingThickness(dimensions));
+    if (!found) throw new RangeError(`${material.name} has no strength for this thickness`);
+    return found;
   }
 
   private modulus(): Trace {

@@ -52,8 +52,8 @@ function product(whole: number, powers: readonly Power[]): Tree {
     const size = Math.abs(power);
     return size === 1 ? tree : ['^', tree, size];
   });
-  const [first, ...rest] = whole === 1 && factors.length > 0 ? factors : [whole, ...factors];
-  return rest.reduce<Tree>((left, right) => ['*', left, right], first ?? 1);
+  const all = whole === 1 && factors.length > 0 ? factors : [whole, ...factors];
+  return all.reduce((left, right): Tree => ['*', left, right]);
 }
 
 /** The same with other names. */
@@ -61,5 +61,5 @@ export function withNames(tree: Tree, rename: (name: string) => string): Tree {
   if (typeof tree === 'string') return rename(tree);
   if (typeof tree === 'number') return tree;
   const [operation, ...parts] = tree;
-  return operation === 'text' ? tree : [operation, ...parts.map((part) => withNames(part, rename))];
+  return [operation, ...parts.map((part) => withNames(part, rename))];
 }

@@ -205,7 +205,7 @@ function moved(head: Unnamed, { beam }: State, named: NamedSupport, component: C
   const isTurn = component === 'rotation';
   const given = beam.given(isTurn ? `\\varphi_{${letter}}` : `\\Delta_{${letter}}`);
   const isAgainst = isTurn && fixingSense(beam.named, named) > 0;
-  const product = ['*', 'r', 's'] as const;
+  const product = ['*', 'r', given.symbol] as const;
   return formula(
     {
       ...head,
@@ -215,7 +215,7 @@ function moved(head: Unnamed, { beam }: State, named: NamedSupport, component: C
     { method: 'closed form', tree: isAgainst ? ['neg', product] : product },
     () => [
       { name: 'r', trace: r },
-      { name: 's', trace: given },
+      { name: given.symbol, trace: given },
     ],
   );
 }

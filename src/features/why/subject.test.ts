@@ -1,7 +1,10 @@
 import { readFileSync } from 'node:fs';
 import { describe, expect, test } from 'vitest';
-import { criteriaDocument } from '@/engine/check';
+import { type Criteria, criteriaDocument } from '@/engine/check';
+import type { UnitSystemName } from '@/engine/quantity';
 import { designationKey, materialFor } from '@/engine/section';
+import type { Template } from '@/engine/template';
+import { parseExpression } from '@/engine/template/parse';
 import { evaluateMember } from '@/features/member/evaluate';
 import { readSectionTable } from '@/features/section/import';
 import { sectionTableMetaSchema, toSectionItem, toSectionValues } from '@/features/section/section';
@@ -32,21 +35,18 @@ function sectionOf({ designation, table, material: id }: NonNullable<DemoMember[
   return { values, material, table, tableName: meta.name, edition: 1, computed: row.computed };
 }
 
-/** A member of the demo as its page has it, and what the page shows. */
-function asked(member: DemoMember) {
-  const section = member.section ? sectionOf(member.section) : null;
-  const criteria = member.criteria
-    ? criteriaDocument.parse(readJson(`data/criteria/${member.criteria}.json`))
-    : null;
-  const inputs = {
-    template: shippedTemplate(member.template),
-    parameters: member.parameters,
-    system: member.criteria?.endsWith('-us') ? ('us' as const) : ('metric' as const),
-    section,
-    criteria,
-    ownWeight: member.self_weight ?? true,
-    patterns: true,
-  };
+interface Given {
+  readonly template: Template;
+  readonly parameters: Readonly<Record<string, unknown>>;
+  readonly section?: ReturnType<typeof sectionOf> | null;
+  readonly criteria: Criteria | null;
+  readonly system: UnitSystemName;
+  readonly ownWeight?: boolean;
+}
+
+/** A member as its page has it, and what it is asked about as. */
+function pageOf({ section = null, ownWeight = true, ...given }: Given) {
+  const inputs = { ...given, section, ownWeight, patterns: true };
   const reading = evaluateMember(inputs);
   if (!reading.ok) throw new Error(JSON.stringify(reading.faults));
   const { evaluation } = reading;
@@ -54,9 +54,19 @@ function asked(member: DemoMember) {
   return { evaluation, subject };
 }
 
+const demoPage = ({ template, parameters, section, criteria, self_weight }: DemoMember) =>
+  pageOf({
+    template: shippedTemplate(template),
+    parameters,
+    section: section ? sectionOf(section) : null,
+    criteria: criteria ? criteriaDocument.parse(readJson(`data/criteria/${criteria}.json`)) : null,
+    system: criteria?.endsWith('-us') ? 'us' : 'metric',
+    ownWeight: self_weight ?? true,
+  });
+
 const ALL = { kind: 'all' } as const;
 
-function keysOf({ evaluation, subject }: ReturnType<typeof asked>): Asked[] {
+function keysOf({ evaluation, subject }: ReturnType<typeof pageOf>): Asked[] {
   const { total, groups, strength, checks, section } = evaluation;
   const source = { text: 'EN 1990', fromMemory: true };
   return [
@@ -124,12 +134,79 @@ function keysOf({ evaluation, subject }: ReturnType<typeof asked>): Asked[] {
   ];
 }
 
+const expression = (text: string) => {
+  const parsing = parseExpression(text);
+  if (!parsing.ok) throw new Error(parsing.message);
+  return { text, tree: parsing.tree };
+};
+
+/** A shipped template on other supports: those with a stiffness are springs. */
+function onSupports(slug: string, supports: readonly (readonly [at: string, kv?: string])[]): Template {
+  const template = shippedTemplate(slug);
+  const made = supports.map(([at, kv]) =>
+    kv === undefined
+      ? { at: expression(at), kind: 'pin' as const }
+      : { at: expression(at), kind: 'free' as const, kv: expression(kv) },
+  );
+  return { ...template, beam: { ...template.beam, supports: made } };
+}
+
+const IPE = { designation: 'IPE 270', table: 'european-i', material: 's355' };
+const CRITERIA = criteriaDocument.parse(readJson('data/criteria/steel-elastic-en.json'));
+const STRICT: Criteria = {
+  ...CRITERIA,
+  deflection: CRITERIA.deflection.map((limit, index) => ({
+    ...limit,
+    overhang_factor: 2,
+    ...(index === 0 && { cap: 0.004 }),
+  })),
+};
+
+describe('supports that move, limits of every kind, and own weight on a slope', () => {
+  const CASES: readonly (readonly [string, Omit<Parameters<typeof pageOf>[0], 'criteria' | 'system'>])[] = [
+    ['a sprung prop', { template: shippedTemplate('propped-cantilever-spring-uniform'), parameters: {} }],
+    ['a sprung root', { template: shippedTemplate('cantilever-spring-root-uniform'), parameters: {} }],
+    ['a settlement', { template: shippedTemplate('support-settlement'), parameters: { ends: 'fixed' } }],
+    [
+      'a rafter',
+      {
+        template: shippedTemplate('sloping-rafter-uniform'),
+        parameters: { wp: { Q: '1 kN/m', S: '0.9 kN/m' } },
+      },
+    ],
+    [
+      'both supports sprung, with overhangs',
+      {
+        template: onSupports('overhang-double-uniform', [
+          ['a', 'w*300'],
+          ['a + L', 'w*100'],
+        ]),
+        parameters: { w: { G: '2 kN/m', Q: '3 kN/m' } },
+      },
+    ],
+    [
+      'only the left one',
+      {
+        template: onSupports('overhang-double-uniform', [['a', 'w*200'], ['a + L']]),
+        parameters: { w: { Q: '3 kN/m' } },
+      },
+    ],
+  ];
+  test.each(CASES)('%s', { timeout: 30_000 }, (_, given) => {
+    for (const criteria of [CRITERIA, STRICT]) {
+      const page = pageOf({ ...given, section: sectionOf(IPE), criteria, system: 'metric' });
+      expect(page.evaluation.checks?.rows.length).toBeGreaterThan(2);
+      expect(wrongIn(page.subject, keysOf(page))).toEqual([]);
+    }
+  });
+});
+
 describe('every number of the demo’s members comes from its parts', () => {
   test.each(MEMBERS.map((member) => [member.mark, member] as const))(
     '%s',
     { timeout: 30_000 },
     (_, member) => {
-      const page = asked(member);
+      const page = demoPage(member);
       expect(wrongIn(page.subject, keysOf(page))).toEqual([]);
     },
   );

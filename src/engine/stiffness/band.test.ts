@@ -36,6 +36,20 @@ describe('SymmetricBand', () => {
     expect(band.solve(right).map((value) => value.rounded())).toEqual([4, -1.25]);
   });
 
+  test('takes a pivot above n · 2⁻¹⁰⁰ of its diagonal, in any unit, and no other', () => {
+    for (const unit of [1, 2 ** -90, 2 ** 90]) {
+      const withPivot = (pivot: number) => {
+        const band = new SymmetricBand(2);
+        band.set(0, 0, Wide.of(unit));
+        band.set(1, 0, Wide.of(unit));
+        band.set(1, 1, Wide.pair(unit, pivot * unit));
+        return () => band.solve([Wide.of(unit), Wide.of(unit)]);
+      };
+      expect(withPivot(2 ** -98)().map((value) => value.rounded())).toEqual([1, 0]);
+      expect(withPivot(2 ** -99)).toThrow(SingularStiffness);
+    }
+  });
+
   test('names the unknown whose pivot vanishes', () => {
     const band = new SymmetricBand(2);
     band.set(0, 0, Wide.of(1));

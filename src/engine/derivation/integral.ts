@@ -15,7 +15,7 @@ export type NumberTerm = {
 type Polynomial = { coefficients: number[]; kind: Kind | 'number' };
 
 /** ∫ p q dx over a stretch, times a factor over a stiffness. */
-export type Product = {
+type Product = {
   length: number;
   p: Polynomial;
   /** Null for a constant 1. */

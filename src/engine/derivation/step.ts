@@ -19,7 +19,7 @@ export type Frame = {
 };
 
 /** A step that calculates one value from an expression. */
-export type Calculation = Frame & {
+type Calculation = Frame & {
   expression: Expression;
   /** Written instead of the expression's own symbols. */
   symbols?: string;

@@ -120,7 +120,7 @@ const GREEK: Readonly<Record<string, string>> = {
 };
 
 /** A letter in running text: w, P_{1}, C_{A}, "the own weight". */
-export function plainLetter(tex: string): string {
+function plainLetter(tex: string): string {
   if (tex.includes('self')) return 'the own weight';
   return tex
     .replaceAll(/\\([a-zA-Z]+)/g, (_, name: string) => GREEK[name] ?? '')

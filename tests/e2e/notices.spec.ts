@@ -5,6 +5,16 @@ import { tellPerson } from './support/tell';
 
 test.afterAll(closeConnection);
 
+/** Signed in, with nothing unread whatever other journeys have told. */
+async function enterWithNothingNew(page: Page, baseURL: string | undefined): Promise<void> {
+  await enter(page, baseURL);
+  const answer = await page.request.post('/api/v1/notices/read', {
+    data: { until: new Date().toISOString() },
+    headers: { origin: new URL(baseURL ?? '').origin },
+  });
+  expect(answer.status()).toBe(200);
+}
+
 const bellOf = (page: Page) => page.locator('[data-bell] > summary');
 const HREF = '/templates/propped-cantilever-overhang-uniform';
 
@@ -13,7 +23,7 @@ test('a recall rings the bell on every open page, comes by e-mail, and is read b
   context,
   baseURL,
 }) => {
-  await enter(page, baseURL);
+  await enterWithNothingNew(page, baseURL);
   const other = await context.newPage();
   await Promise.all([page.goto('/jobs'), other.goto('/sections')]);
   await expect(bellOf(page)).toHaveText(/Notices/);
@@ -28,7 +38,7 @@ test('a recall rings the bell on every open page, comes by e-mail, and is read b
       dedupe: event,
       mailData: { reference: 'Prop 3' },
     });
-    for (const one of [page, other]) await expect(bellOf(one)).toHaveText(/[1-9]\d* unread/);
+    for (const one of [page, other]) await expect(bellOf(one)).toHaveText(/1 unread/);
   });
 
   await test.step('the bell says it, by keyboard', async () => {
@@ -71,7 +81,7 @@ test('all are marked as read at once, and the e-mails are chosen under Account',
   page,
   baseURL,
 }) => {
-  await enter(page, baseURL);
+  await enterWithNothingNew(page, baseURL);
   for (const n of [1, 2])
     await tellPerson(ENGINEER.email, {
       kind: 'issued',

@@ -137,7 +137,7 @@ function toHtml(subject: string, items: readonly MailItem[], circumstances: Circ
 <html lang="en-GB">
 <head><meta charset="utf-8"><meta name="viewport" content="width=device-width, initial-scale=1"><meta name="color-scheme" content="light"><title>${encode(subject)}</title></head>
 <body ${style('margin:0', 'padding:20px 10px', `background:${COLOUR.paper}`, `color:${COLOUR.ink}`)}>
-<table role="presentation" width="100%" cellpadding="0" cellspacing="0" ${style('max-width:600px', 'margin:0 auto', 'border-collapse:collapse', `border:2px solid ${COLOUR.ink}`, `background:${COLOUR.paper}`, FONT, 'font-size:15px', 'line-height:22px')}>
+<table role="presentation" width="100%" cellpadding="0" cellspacing="0" ${style('max-width:600px', 'margin:0 auto', 'border-collapse:separate', 'border-spacing:0', `border:2px solid ${COLOUR.ink}`, `background:${COLOUR.paper}`, FONT, 'font-size:15px', 'line-height:22px')}>
 ${rows.join('\n')}
 </table>
 </body>

@@ -9,6 +9,7 @@ const ACTION_WORDS: Readonly<Record<string, string>> = {
   'member.remove': 'Member removed',
   'password.change': 'Password changed',
   'person.set-units': 'Units chosen',
+  'person.set-notices': 'E-mails chosen',
   'recall.open': 'Recall opened',
   'recall.decide': 'Recall decided for a member',
   'recall.close': 'Recall closed',

@@ -1,10 +1,12 @@
 import { useMemo, useRef } from 'react';
+import type { AskedFigure } from './asked';
 import type { DrawingFormat } from './format';
 import { origin } from './names';
 import { type MomentSide, QUANTITIES, type Quantity } from './signs';
+import { AskedFigures } from './strip/AskedFigures';
 import { DiagramStrip, EmptyStrip } from './strip/DiagramStrip';
 import { Elevation, type SidewaysRestraint } from './strip/Elevation';
-import { reactionMarks } from './strip/elevation-layout';
+import { type ReactionMark, reactionMarks } from './strip/elevation-layout';
 import { type DrawingFault, FaultCloud } from './strip/FaultCloud';
 import { EditableFigure } from './strip/FigureText';
 import type { Figure } from './strip/figures';
@@ -26,6 +28,8 @@ export type ElevationStripProps = Omit<StripInput, 'quantities' | 'momentSide'> 
     restraints?: readonly SidewaysRestraint[] | undefined;
     /** Called with the symbol of a figure that is clicked; without it no figure is editable. */
     onEditFigure?: ((symbol: string) => void) | undefined;
+    /** Called with a reaction or a peak that is asked about, and what was pressed. */
+    onAsk?: ((figure: AskedFigure, pressed: Element) => void) | undefined;
     /** The last good drawing, of inputs that no longer hold: dashed, and without readings. */
     dashed?: boolean | undefined;
     /** Why strips are empty: "Not drawn: the span is 0." */
@@ -54,16 +58,13 @@ type DrawnProps = ElevationStripProps & {
   input: StripInput;
   frame: Frame;
   layout: StripLayout;
+  marks: readonly ReactionMark[];
   height: number;
 };
 
 /** The picture itself: everything but what can be taken hold of. */
-function Drawn({ input, frame, layout, height, ...props }: DrawnProps) {
-  const { beam, format, solution, reactions, notDrawn, quantities = QUANTITIES } = props;
-  const marks = useMemo(
-    () => reactionMarks(beam, reactions ?? solution?.reactions ?? NONE, format),
-    [beam, reactions, solution, format],
-  );
+function Drawn({ input, frame, layout, height, marks, ...props }: DrawnProps) {
+  const { beam, format, notDrawn, quantities = QUANTITIES } = props;
   const messageAt = quantities.includes('moment') ? 'moment' : quantities[0];
   const summary = useMemo(() => summaryOf(input, format), [input, format]);
   return (
@@ -112,8 +113,8 @@ function Drawn({ input, frame, layout, height, ...props }: DrawnProps) {
 }
 
 /** What can be taken hold of: the plumb line and the editable figures, over the picture. */
-function Handles({ frame, layout, height, ...props }: DrawnProps) {
-  const { beam, format, onEditFigure } = props;
+function Handles({ frame, layout, height, marks, ...props }: DrawnProps) {
+  const { beam, format, onEditFigure, onAsk } = props;
   const [x, move] = usePlumb(beam.length, format.station, props);
   const spoken = useRested(spokenReadings(layout.diagrams, x, format));
   return (
@@ -131,6 +132,7 @@ function Handles({ frame, layout, height, ...props }: DrawnProps) {
             onMove={move}
           />
         )}
+        {onAsk && <AskedFigures beam={beam} frame={frame} layout={layout} marks={marks} onAsk={onAsk} />}
         {onEditFigure &&
           layout.elevation.figures
             .filter(isEditable)
@@ -185,7 +187,11 @@ export function ElevationStrip(props: ElevationStripProps) {
   );
   const layout = useMemo(() => layStrip(input, frame, format), [input, frame, format]);
   const height = layout.to + frame.axis;
-  const drawn = { ...props, input, frame, layout, height };
+  const marks = useMemo(
+    () => reactionMarks(beam, reactions ?? solution?.reactions ?? NONE, format),
+    [beam, reactions, solution, format],
+  );
+  const drawn = { ...props, input, frame, layout, marks, height };
   return (
     <figure ref={host} className={`elevation-strip${dashed ? ' last-good' : ''}`} data-mode={frame.mode}>
       <Drawn {...drawn} />

@@ -1,4 +1,5 @@
-import { useMemo } from 'react';
+import { type ReactNode, useMemo } from 'react';
+import type { AskedStation } from './asked';
 import type { DrawingFormat } from './format';
 import { letterAt, namedSupports, origin } from './names';
 import { QUANTITIES, type Quantity } from './signs';
@@ -10,6 +11,8 @@ type Props = Pick<StripInput, 'beam' | 'solution' | 'envelopes'> & {
   format: DrawingFormat;
   quantities?: readonly Quantity[] | undefined;
   onToggle?: ((isOpen: boolean) => void) | undefined;
+  /** What stands in a cell instead of its figure alone. */
+  cell?: ((at: AskedStation, figure: string) => ReactNode) | undefined;
 };
 
 function columnsOf({ solution, envelopes, quantities = QUANTITIES }: Props): StationColumn[] {
@@ -17,18 +20,18 @@ function columnsOf({ solution, envelopes, quantities = QUANTITIES }: Props): Sta
     const envelope = envelopes?.[quantity];
     if (envelope) {
       const both = [
-        { quantity, words: 'most', curve: envelope.upper },
-        { quantity, words: 'least', curve: envelope.lower },
+        { quantity, words: 'most', curve: envelope.upper, bound: 'upper' as const },
+        { quantity, words: 'least', curve: envelope.lower, bound: 'lower' as const },
       ];
       // The screen turns slope and deflection over, so the lower curve is the one that is most there.
       return quantity === 'slope' || quantity === 'deflection'
         ? [
-            { quantity, words: 'most', curve: envelope.lower },
-            { quantity, words: 'least', curve: envelope.upper },
+            { quantity, words: 'most', curve: envelope.lower, bound: 'lower' },
+            { quantity, words: 'least', curve: envelope.upper, bound: 'upper' },
           ]
         : both;
     }
-    return solution ? [{ quantity, words: '', curve: solution.diagrams[quantity] }] : [];
+    return solution ? [{ quantity, words: '', curve: solution.diagrams[quantity], bound: null }] : [];
   });
 }
 
@@ -75,9 +78,9 @@ export function StationTable(props: Props) {
             return (
               <tr key={place}>
                 <th scope="row">{place}</th>
-                {values.map((value, i) => (
-                  <td key={`${columns[i]?.quantity}${columns[i]?.words}`} className="figure">
-                    {value}
+                {columns.map(({ quantity, words, bound }, i) => (
+                  <td key={quantity + words} className="figure">
+                    {props.cell?.({ quantity, x, side: side ?? 'left', bound }, values[i] ?? '') ?? values[i]}
                   </td>
                 ))}
               </tr>

@@ -5,9 +5,9 @@ import { placeOf } from './extreme';
 import type { Field } from './field';
 import type { Fields } from './fields';
 import type { Spot } from './lettered-beam';
-import { formula, type Head, leaf, noSource } from './node';
+import { formula, type Head, leaf, cited, sourceOf } from './node';
 import type { SectionTraces } from './section';
-import type { Acting, Measure, Part, Source, SubjectCriteria, Trace } from './types';
+import type { Acting, Measure, Part, SubjectCriteria, Trace } from './types';
 
 type CombinedActing = Extract<Acting, { kind: 'combination' }>;
 type CriteriaSource = DeflectionLimit['source'];
@@ -47,7 +47,7 @@ export class CheckTraces {
       {
         method: 'check',
         tree: ['/', ['abs', action.symbol], property.symbol],
-        sources: [noSource(isBending ? 'Navier’s formula' : 'Jourawski’s formula')],
+        sources: [cited(isBending ? 'Navier’s formula' : 'Jourawski’s formula')],
       },
       () => [
         { name: action.symbol, trace: action },
@@ -178,11 +178,6 @@ const placed = (there: Trace, { trace }: Spot): Part[] => [
   { name: there.symbol, trace: there },
   { name: 'x', trace },
 ];
-
-export const sourceOf = ({ publication, clause, from_memory }: CriteriaSource): Source => ({
-  text: `${publication}, ${clause}`,
-  fromMemory: from_memory,
-});
 
 type Chord = {
   readonly left: Trace | null;

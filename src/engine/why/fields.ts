@@ -1,4 +1,5 @@
 import {
+  type Combination,
   cutLoads,
   factorOf,
   LOAD_GROUP_NAMES,
@@ -11,9 +12,9 @@ import { CombinedField, type Share } from './combined-field';
 import type { Field } from './field';
 import { Givens } from './givens';
 import { type CaseLoad, LetteredBeam } from './lettered-beam';
-import { constant, leaf } from './node';
+import { constant, leaf, cited, sourceOf } from './node';
 import { Redundants } from './redundants';
-import type { Acting, Subject, Trace } from './types';
+import type { Acting, Source, Subject, Trace } from './types';
 
 type Combined = Extract<Acting, { kind: 'combination' }>;
 /** A load case that combinations are made of. */
@@ -61,6 +62,7 @@ export class Fields {
   }
 
   private combined({ combination, pattern, source }: Combined): CombinedField {
+    const printed = source ?? this.printedWith(combination.name);
     const shares = this.elementary().flatMap(({ group, span, loads }): Share[] => {
       const factor = group === null ? 1 : factorOf(combination, group);
       if (factor === 0 || (span !== null && !pattern.includes(span))) return [];
@@ -70,7 +72,10 @@ export class Fields {
       return [
         {
           index: this.indexOf(group, span),
-          factor: group === null ? unfactored() : this.factor({ value: factor, group, combination, source }),
+          factor:
+            group === null
+              ? unfactored()
+              : this.factor({ value: factor, group, combination, source: printed }),
           field,
         },
       ];
@@ -101,7 +106,12 @@ export class Fields {
     group,
     combination,
     source,
-  }: Pick<Combined, 'combination' | 'source'> & { readonly value: number; readonly group: string }): Trace {
+  }: {
+    readonly value: number;
+    readonly group: string;
+    readonly combination: Combination;
+    readonly source: Source;
+  }): Trace {
     const known = LOAD_GROUPS.find((one) => one === group);
     return leaf(
       {
@@ -112,6 +122,15 @@ export class Fields {
       },
       { kind: 'criteria', document: this.criteriaName(), source },
     );
+  }
+
+  /** Where the criteria have a combination from. */
+  private printedWith(name: string): Source {
+    const { criteria } = this.subject;
+    const limit = criteria?.limits.find(({ combination }) => combination.name === name);
+    const isStrength = criteria?.strength.some((combination) => combination.name === name);
+    const source = isStrength ? criteria?.document.strength.source : limit?.source;
+    return source ? sourceOf(source) : cited('');
   }
 
   criteriaName(): string {

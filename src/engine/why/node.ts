@@ -35,7 +35,21 @@ const headOf = ({ label, symbol, value, measure }: Trace): Head => ({ label, sym
 export const constant = (head: Head, source: string): Trace =>
   leaf(head, { kind: 'constant', source: { text: source, fromMemory: false } } as const);
 
-export const noSource = (text: string): Source => ({ text, fromMemory: false });
+export const cited = (text: string): Source => ({ text, fromMemory: false });
+
+/** Where the criteria say that something is printed. */
+export const sourceOf = ({
+  publication,
+  clause,
+  from_memory,
+}: {
+  publication: string;
+  clause: string;
+  from_memory: boolean;
+}): Source => ({
+  text: `${publication}, ${clause}`,
+  fromMemory: from_memory,
+});
 
 /** Makes everything once, by its key. */
 export class Once {

@@ -1,6 +1,6 @@
 import { STANDARD_GRAVITY } from '../quantity/index';
 import { elasticStrength, governingThickness, type Material, sectionProperties } from '../section/index';
-import { constant, formula, leaf, node, noSource } from './node';
+import { constant, formula, leaf, node, cited } from './node';
 import { DIMENSIONS_OF } from './section-property';
 import type { Measure, Part, SectionProperty, Source, SubjectSection, Trace } from './types';
 
@@ -120,7 +120,7 @@ export class SectionTraces {
       {
         method: 'definition',
         tree: ['/', 'f_y', ['sqrt', 3]],
-        sources: [noSource('von Mises’ criterion')],
+        sources: [cited('von Mises’ criterion')],
       },
       () => parts({ f_y: this.bendingStrength() }),
     );

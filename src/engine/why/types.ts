@@ -154,8 +154,8 @@ export type Acting =
       readonly kind: 'combination';
       readonly combination: Combination;
       readonly pattern: readonly number[];
-      /** Where its factors are printed. */
-      readonly source: Source;
+      /** Where its factors are printed, if not where the criteria have a combination of this name. */
+      readonly source?: Source;
     };
 
 export type Quantity = 'shear' | 'moment' | 'slope' | 'deflection';
@@ -176,16 +176,18 @@ export type Key =
       readonly side: Side;
       readonly acting: Acting;
     }
-  /** The largest or the smallest value by the engine's signs, at x; and x itself. */
+  /** The largest or the smallest value by the engine's signs, or one that is so near its x alone; and x itself. */
   | {
       readonly kind: 'extreme' | 'place';
       readonly quantity: Quantity;
-      readonly sense: 'max' | 'min';
+      readonly sense: 'max' | 'min' | 'local';
       readonly x: number;
       readonly acting: Acting;
     }
   | { readonly kind: 'contraflexure'; readonly x: number; readonly acting: Acting }
   | { readonly kind: 'redundant' | 'gap'; readonly index: number }
+  /** What a step of the derivation comes to, by the step's id. */
+  | { readonly kind: 'step'; readonly id: string }
   | { readonly kind: 'flexibility'; readonly row: number; readonly column: number }
   | { readonly kind: 'parameter'; readonly symbol: string }
   | { readonly kind: 'load'; readonly index: number }

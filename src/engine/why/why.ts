@@ -37,6 +37,8 @@ export class Traces {
         return fields.all().redundants.value(key.index);
       case 'gap':
         return fields.all().redundants.gap(key.index);
+      case 'step':
+        return this.step(key);
       case 'flexibility':
         return fields.all().redundants.flexibility(key.row, key.column);
       case 'parameter':
@@ -50,6 +52,25 @@ export class Traces {
       case 'check':
         return this.check(key);
     }
+  }
+
+  /** A redundant, a movement of the released beam, a flexibility or a reaction, as the derivation's step finds it. */
+  private step({ id }: KeyOf<'step'>): Trace {
+    const { redundants, beam } = this.fields.all();
+    const { unknowns, parts } = beam.worked;
+    const isOf = (name: string) => id === name || id.startsWith(`${name}-`);
+    for (const [i, { key }] of unknowns.entries()) {
+      if (isOf(`redundant-${key}`)) return redundants.value(i);
+      if (isOf(`gap-${key}`)) return redundants.gap(i);
+      for (const [j, unit] of unknowns.entries())
+        if (isOf(`flexibility-${key}-${unit.key}`) || isOf(`reciprocal-${key}-${unit.key}`))
+          return redundants.flexibility(i, j);
+    }
+    const plain = (tex: string) => `equilibrium-${tex.replaceAll(/[^A-Za-z0-9]/g, '')}`;
+    const action = parts.flatMap(({ actions }) => actions).find(({ tex }) => plain(tex) === id);
+    if (action) return redundants.built.letter(action.tex);
+    if (unknowns.length === 1) return redundants.value(0);
+    throw new RangeError(`no single number stands behind the step ${id}`);
   }
 
   private get parameters() {

@@ -54,7 +54,7 @@ export type DiagramLayout = {
   hatch: string;
   lines: string[];
   dots: Point[];
-  labels: (Figure & { leader: Point | null; from: Point })[];
+  labels: (Figure & { leader: Point | null; from: Point; peak: Peak })[];
   notes: string[];
 };
 
@@ -123,9 +123,10 @@ function layLabels(
     bottom: layout.bottom - 1,
   };
   const placed = placeLabels(wishes, { bounds, curves: outlines, baseline: layout.base });
-  return placed.map(({ wish, x, y, anchor, leader }) => {
+  return placed.flatMap(({ wish, x, y, anchor, leader }) => {
     const from = wishes[wish]?.at ?? [x, y];
-    return { x, y, anchor, leader, from, text: texts[wish] ?? '' };
+    const peak = peaks[wish];
+    return peak ? [{ x, y, anchor, leader, from, peak, text: texts[wish] ?? '' }] : [];
   });
 }
 

@@ -1,5 +1,6 @@
 import type { Beam } from '@/engine/model/index';
 import type { Piecewise } from '@/engine/polynomial/index';
+import type { AskedStation } from '../asked';
 import type { DrawingFormat } from '../format';
 import { valuesAt } from '../geometry/curve';
 import { roundStep } from '../geometry/scale';
@@ -7,7 +8,12 @@ import { type Quantity, toScreen } from '../signs';
 import { PURPOSE } from './diagram-layout';
 
 /** A column of the table: one curve, or one side of an envelope. */
-export type StationColumn = { quantity: Quantity; words: string; curve: Piecewise };
+export type StationColumn = {
+  quantity: Quantity;
+  words: string;
+  curve: Piecewise;
+  bound: AskedStation['bound'];
+};
 
 export type StationRow = { x: number; side: 'left' | 'right' | null; values: string[] };
 

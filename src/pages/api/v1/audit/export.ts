@@ -14,7 +14,7 @@ export const GET = endpoint(
   },
   async (_, { user, query: { format, ...query } }) => {
     const pieces = await exportRecord(user, query, format);
-    return new Response(ReadableStream.from(pieces).pipeThrough(new TextEncoderStream()), {
+    return new Response(bytesOf(pieces), {
       headers: {
         'Content-Type': TYPES[format],
         'Content-Disposition': `attachment; filename="record-of-events.${format}"`,
@@ -23,3 +23,18 @@ export const GET = endpoint(
     });
   },
 );
+
+/** Asks for the next piece when whoever reads has taken the one before. */
+function bytesOf(pieces: AsyncGenerator<string>): ReadableStream<Uint8Array> {
+  const encoder = new TextEncoder();
+  return new ReadableStream({
+    async pull(controller) {
+      const { done, value } = await pieces.next();
+      if (done) controller.close();
+      else controller.enqueue(encoder.encode(value));
+    },
+    async cancel() {
+      await pieces.return(undefined);
+    },
+  });
+}

@@ -33,7 +33,7 @@ function Gutter({
       <text x={left} y={plotTop + 39} className="note">{`${SYMBOL[quantity]}, ${unit}`}</text>
       <path className={`curve-${quantity}`} d={`M${left} ${plotTop + 50.5}h34`} />
       {notes.map((note, i) => (
-        <text key={note} x={left} y={plotTop + 66 + i * 14} className="note">
+        <text key={note} x={left} y={plotTop + 66 + i * frame.notePitch} className="note">
           {note}
         </text>
       ))}

@@ -102,7 +102,7 @@ function layLabels(
   outlines: readonly Point[][],
 ) {
   const { frame } = context;
-  const size = 13;
+  const size = frame.mode === 'print' ? 13.4 : 13;
   const middle = ({ x, to }: Peak) => (to === undefined ? x : (x + to) / 2);
   const texts = peaks.map((peak) => peakText(context, layout.quantity, peak));
   const wishes = peaks.map((peak, i): LabelWish => {
@@ -151,17 +151,21 @@ function ordinatesOf({ frame, side }: Context, diagram: Diagram, plotTop: number
   return { ...scale, toY: (value: number) => scale.base - up * value * scale.perUnit };
 }
 
-function notesOf({ side }: Context, { quantity, curves, notes }: Diagram, times: string | null): string[] {
+function notesOf({ side, frame }: Context, diagram: Diagram, times: string | null): string[] {
+  const { quantity, curves, notes } = diagram;
   const first = [curves.length > 1 ? null : signRule(quantity, side), times].filter((part) => part !== null);
+  // The gutter of a printed sheet is narrow.
+  if (frame.mode === 'print') return [...first, ...notes];
   return [...(first.length > 0 ? [first.join(', ')] : []), ...notes];
 }
 
 /** Tall enough for the diagram and for what the gutter has to say. */
 function heightOf(context: Context, diagram: Diagram): number {
   const height = context.frame.heights[diagram.quantity];
+  const times = diagram.quantity === 'deflection' ? '' : null;
   return context.frame.mode === 'phone'
     ? height
-    : Math.max(height, 60 + notesOf(context, diagram, '').length * 14);
+    : Math.max(height, 60 + notesOf(context, diagram, times).length * context.frame.notePitch);
 }
 
 /** One strip from y = top downward. */

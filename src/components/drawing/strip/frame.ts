@@ -14,6 +14,8 @@ type Metrics = {
   heights: Record<Quantity, number>;
   /** Of a strip without a result. */
   empty: number;
+  /** From one line of notes to the next. */
+  notePitch: number;
   comb: number;
   combStacked: number;
   combPitch: number;
@@ -33,6 +35,7 @@ const METRICS: Record<StripMode, Metrics> = {
     axis: 46,
     heights: { shear: 116, moment: 130, slope: 80, deflection: 92 },
     empty: 56,
+    notePitch: 14,
     comb: 26,
     combStacked: 17,
     combPitch: 22,
@@ -49,6 +52,7 @@ const METRICS: Record<StripMode, Metrics> = {
     axis: 44,
     heights: { shear: 92, moment: 104, slope: 66, deflection: 76 },
     empty: 24,
+    notePitch: 14,
     comb: 26,
     combStacked: 15,
     combPitch: 15,
@@ -65,6 +69,7 @@ const METRICS: Record<StripMode, Metrics> = {
     axis: 28,
     heights: { shear: 80, moment: 92, slope: 64, deflection: 74 },
     empty: 44,
+    notePitch: 16,
     comb: 18,
     combStacked: 14,
     combPitch: 18,

@@ -1,62 +1,92 @@
-import { readFileSync } from 'node:fs';
-import { createRequire } from 'node:module';
-import { expect, test } from '@playwright/test';
-import type { AxeResults } from 'axe-core';
+import { expect, type Page, test } from '@playwright/test';
 import { enter } from './support/person';
+import { expectSound, WIDTHS } from './support/screen';
 
-/** Read whole and put into the page: the content policy is bypassed for it alone. */
-const AXE = readFileSync(createRequire(import.meta.url).resolve('axe-core/axe.min.js'), 'utf8');
 test.use({ bypassCSP: true });
+test.setTimeout(90_000);
 
+const TEMPLATE = '/templates/propped-cantilever-overhang-uniform';
 const SCREENS = {
   catalogue: '/templates',
-  template: '/templates/propped-cantilever-overhang-uniform',
-  'template in error': '/templates/propped-cantilever-overhang-uniform?L=0',
+  'catalogue without an answer': '/templates?q=zzzqqq',
+  template: TEMPLATE,
+  'template in error': `${TEMPLATE}?L=0`,
+  'template of loads in rows': '/templates/simple-span-points-uniform',
   sections: '/sections?q=hea200',
+  'sections without an answer': '/sections?q=zzzqqq',
   section: '/sections/american-wide-flange/W12x26',
   jobs: '/jobs',
   job: '/jobs/Q-2417',
   'new job': '/jobs/new',
+  'choice of a template': '/jobs/Q-2417/members/new',
   'new member': '/jobs/new-member?template=simple-span-uniform',
   member: '/jobs/Q-2417/members/LF4',
+  'calc sheet': '/jobs/Q-2417/members/LF4/sheet',
   account: '/account',
   notices: '/notices',
   help: '/help/units',
 };
-const LOOKS = [
-  { width: 1440, scheme: 'light' },
-  { width: 1024, scheme: 'dark' },
-  { width: 390, scheme: 'light' },
-] as const;
+
+function listen(page: Page): string[] {
+  const said: string[] = [];
+  page.on('console', (message) => message.type() === 'error' && said.push(message.text()));
+  page.on('pageerror', (error) => said.push(error.message));
+  return said;
+}
 
 for (const [name, path] of Object.entries(SCREENS))
-  test(`${name}: nothing serious for assistive technology, nothing beside the page, no error said to the console`, async ({
+  test(`${name}: sound at every width, by day and by night, and no error said to the console`, async ({
     page,
     baseURL,
   }) => {
     await enter(page, baseURL);
-    const said: string[] = [];
-    page.on('console', (message) => message.type() === 'error' && said.push(message.text()));
-    page.on('pageerror', (error) => said.push(error.message));
-    for (const { width, scheme } of LOOKS) {
+    const said = listen(page);
+    for (const width of WIDTHS) {
       await page.setViewportSize({ width, height: 900 });
-      await page.emulateMedia({ colorScheme: scheme });
       const answer = await page.goto(path, { waitUntil: 'networkidle' });
       expect(answer?.status()).toBe(200);
-      const beside = await page.evaluate(() => document.documentElement.scrollWidth - window.innerWidth);
-      expect(beside, `overflow at ${width}`).toBeLessThanOrEqual(0);
-      await page.evaluate(AXE);
-      const found = await page.evaluate(async () => {
-        const { axe } = window as unknown as { axe: { run: () => Promise<AxeResults> } };
-        const { violations } = await axe.run();
-        return violations
-          .filter(({ impact }) => impact === 'serious' || impact === 'critical')
-          .map(({ id, nodes }) => `${id}: ${nodes[0]?.html}`);
-      });
-      expect(found, `${width}, ${scheme}`).toEqual([]);
+      await expectSound(page, String(width));
     }
     expect(said).toEqual([]);
   });
+
+test('sign-in and its refusal are sound', async ({ page }) => {
+  for (const width of WIDTHS) {
+    await page.setViewportSize({ width, height: 900 });
+    await page.goto('/sign-in', { waitUntil: 'networkidle' });
+    await expectSound(page, `sign-in ${width}`);
+  }
+  await page.getByLabel('E-mail').fill('nobody@quillmere.example');
+  await page.getByLabel('Password').fill('not-the-password');
+  await page.getByRole('button', { name: 'Sign in', exact: true }).click();
+  await expect(page.getByRole('alert').first()).toBeVisible();
+  await expectSound(page, 'refused');
+});
+
+test('a form that comes back, a member in error and a lost address are sound', async ({ page, baseURL }) => {
+  await enter(page, baseURL);
+  await page.goto('/jobs/new', { waitUntil: 'networkidle' });
+  await page.locator('#new-job').evaluate((form: HTMLFormElement) => {
+    form.noValidate = true;
+    form.requestSubmit();
+  });
+  await expect(page.getByText('Give the job a name.')).toBeVisible();
+  await expect(page.getByLabel('Number')).toBeFocused();
+  for (const width of WIDTHS) {
+    await page.setViewportSize({ width, height: 900 });
+    await expectSound(page, `form ${width}`);
+  }
+  await page.goto('/jobs/Q-2417/members/LF4', { waitUntil: 'networkidle' });
+  await page.getByRole('textbox', { name: /Span/ }).fill('0');
+  await expect(page.getByText('One input stops the drawing')).toBeVisible();
+  for (const width of WIDTHS) {
+    await page.setViewportSize({ width, height: 900 });
+    await expectSound(page, `member in error ${width}`);
+  }
+  page.on('dialog', (dialog) => dialog.accept());
+  await page.goto('/nowhere', { waitUntil: 'networkidle' });
+  await expectSound(page, 'lost');
+});
 
 test('without a script the catalogue and a template still say what they hold', async ({
   browser,
@@ -67,7 +97,7 @@ test('without a script the catalogue and a template still say what they hold', a
   await enter(page, baseURL);
   await page.goto('/templates');
   await expect(page.getByText('Propped cantilever with overhang, uniform load on all').first()).toBeVisible();
-  await page.goto('/templates/propped-cantilever-overhang-uniform');
+  await page.goto(TEMPLATE);
   await expect(page.getByRole('img', { name: /span|beam/i }).first()).toBeVisible();
   await context.close();
 });

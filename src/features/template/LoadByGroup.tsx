@@ -80,7 +80,7 @@ function AddGroup({ name, free, onAdd }: AddProps) {
   return (
     <details className="px-14 pb-9">
       <summary
-        aria-label={`Add a load group to ${name}`}
+        aria-label={`Add a group to ${name}`}
         className="inline-block min-h-26 list-none text-schedule text-ink-2 underline decoration-ochre decoration-dotted underline-offset-3 pointer-coarse:min-h-44 [&::-webkit-details-marker]:hidden"
       >
         Add a group

@@ -13,6 +13,7 @@ import type { Figure } from './strip/figures';
 import { type Frame, frameOf, type StripMode } from './strip/frame';
 import { MechanismMark } from './strip/MechanismMark';
 import { PlumbLine } from './strip/PlumbLine';
+import { reactionPlaces } from './strip/Reactions';
 import { spokenReadings } from './strip/readings';
 import { StationAxis, stationLines } from './strip/StationAxis';
 import { layStrip, type StripInput, type StripLayout } from './strip/strip-layout';
@@ -115,6 +116,14 @@ function Drawn({ input, frame, layout, height, marks, ...props }: DrawnProps) {
 /** What can be taken hold of: the plumb line and the editable figures, over the picture. */
 function Handles({ frame, layout, height, marks, ...props }: DrawnProps) {
   const { beam, format, onEditFigure, onAsk } = props;
+  const values = useMemo(
+    () =>
+      reactionPlaces({ beam, frame, layout: layout.elevation, marks }).map(({ mark, ...place }) => ({
+        ...place,
+        text: mark.text,
+      })),
+    [beam, frame, layout, marks],
+  );
   const [x, move] = usePlumb(beam.length, format.station, props);
   const spoken = useRested(spokenReadings(layout.diagrams, x, format));
   return (
@@ -129,6 +138,7 @@ function Handles({ frame, layout, height, marks, ...props }: DrawnProps) {
             height={height}
             x={x}
             from={origin(beam)}
+            values={values}
             onMove={move}
           />
         )}

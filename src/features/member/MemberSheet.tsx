@@ -82,10 +82,12 @@ export function MemberSheet({ data }: { readonly data: WorkspaceData }) {
       </div>
       <div className="grid grid-cols-[minmax(0,1fr)] lg:grid-cols-[minmax(0,1fr)_var(--title-column)]">
         <Zones data={data} work={work} />
-        <aside className="flex min-w-0 flex-col border-ink max-lg:border-t lg:border-l">
-          <BasisZone template={data.template} evaluation={live.evaluation} system={system} />
-          <HistoryZone history={work.history} />
-          <div className="mt-auto">
+        <aside className="title-column">
+          <div className="min-w-0">
+            <BasisZone template={data.template} evaluation={live.evaluation} system={system} />
+            <HistoryZone history={work.history} />
+          </div>
+          <div>
             <MemberBlock data={data} work={work} />
           </div>
         </aside>

@@ -14,8 +14,8 @@ interface SideProps {
 /** The chosen template at a glance, which stays in view while the list is gone through, and its title block. */
 export function CatalogueSide({ practice, card }: SideProps) {
   return (
-    <aside className="flex min-w-0 flex-col border-ink max-lg:border-t lg:border-l">
-      <div className="lg:sticky lg:top-0">
+    <aside className="title-column">
+      <div className="min-w-0 lg:sticky lg:top-0">
         {card && (
           <section className="zone max-md:hidden">
             <ZoneHeading letter="A" note={<a href={paths.template(card.row.slug)}>Open</a>}>
@@ -26,7 +26,7 @@ export function CatalogueSide({ practice, card }: SideProps) {
         )}
         <FirstSteps letter="B" />
       </div>
-      <div className="mt-auto bg-paper lg:relative">
+      <div className="bg-paper lg:relative">
         {card ? <ChosenBlock practice={practice} card={card} /> : <NoneBlock practice={practice} />}
       </div>
     </aside>

@@ -4,6 +4,7 @@ import { type DrawingFormat, figure } from '../format';
 import { textWidth } from '../geometry/text-width';
 import { ticksPath } from '../marks/paths';
 import type { DiagramLayout } from './diagram-layout';
+import type { Figure } from './figures';
 import { type Frame, xOf } from './frame';
 import { plumbPath } from './plumb-path';
 import { readingsAt } from './readings';
@@ -17,6 +18,8 @@ type Props = {
   height: number;
   x: number;
   from: string;
+  /** Values that stand on the elevation, and are not crossed. */
+  values: readonly Figure[];
   onMove: (x: number) => void;
 };
 
@@ -125,14 +128,14 @@ function handlersOf({ frame, format, x, onMove }: Props) {
 
 /** The one line through all strips: a handle, a ring on each curve, its reading and the distance from the left end. */
 export function PlumbLine(props: Props) {
-  const { frame, format, layout, height, x, from } = props;
+  const { frame, format, layout, height, x, from, values } = props;
   const at = xOf(frame, x);
   const phone = frame.mode === 'phone';
   const text = `x = ${figure(format, 'length', x)}`;
   const handle = phone ? 8 : 18;
   const texts = useMemo(
-    () => [...layout.elevation.figures, ...layout.diagrams.flatMap(({ labels }) => labels)],
-    [layout],
+    () => [...values, ...layout.elevation.figures, ...layout.diagrams.flatMap(({ labels }) => labels)],
+    [layout, values],
   );
   const line = plumbPath(
     at,

@@ -1,4 +1,4 @@
-import { lusolve, SparseMatrix } from 'mathjs';
+import * as math from 'mathjs';
 import { CholeskyDecomposition, Matrix } from 'ml-matrix';
 import type { Beam } from '@/engine/model/index';
 import { Answer, type Equations, Frame } from './frame';
@@ -81,13 +81,18 @@ class Rows implements Equations {
   }
 
   solve(): void {
-    this.movements = lusolve(this.stiffness, this.right) as number[][];
+    this.movements = math.lusolve(this.stiffness, this.right) as number[][];
   }
 
   movement(row: number): number {
     return this.movements[row]![0]!;
   }
 }
+
+type Columns = { values: number[]; index: number[]; ptr: number[]; size: [number, number]; datatype: string };
+
+/** The class is there, but its types leave it out. */
+const { SparseMatrix } = math as unknown as { SparseMatrix: new (columns: Columns) => math.Matrix };
 
 /** mathjs on a sparse matrix, made of columns that hold the band. */
 class Sparse implements Equations {
@@ -126,7 +131,7 @@ class Sparse implements Equations {
       ptr.push(values.length);
     }
     const matrix = new SparseMatrix({ values, index, ptr, size: [size, size], datatype: 'number' });
-    this.movements = (lusolve(matrix, this.right) as unknown as { toArray(): number[][] }).toArray();
+    this.movements = (math.lusolve(matrix, this.right) as unknown as { toArray(): number[][] }).toArray();
   }
 
   movement(row: number): number {

@@ -1,5 +1,5 @@
-/** A step of Halley's method that is this part of the piece is the last: the one after it, its cube, would be rounding. */
-const STEP = 1e-5;
+/** Where Newton's step is this part of the piece, Halley's is the last: the one after it, its cube, would be rounding. */
+const STEP = 1e-6;
 const STEPS = 100; // bisection alone needs 60
 
 /** Zeros of c₀ + c₁ s + c₂ s² strictly between 0 and h, ascending, into `out`; their number. Closed form. */
@@ -49,10 +49,13 @@ export function findMonotoneZero(c: Float64Array, stretch: Float64Array): void {
     const curve = c2 + s * (3 * c3 + s * 6 * c4); // half the second derivative
     if (value < 0 === rises) from = s;
     else to = s;
-    const next = s - (value * slope) / (slope * slope - value * curve);
-    const step = Math.abs(next - s);
-    s = (next > from && next < to) || step <= last ? next : (from + to) / 2; // also where the quotient is none
-    if (step <= last) break;
+    const newton = value / slope;
+    const bend = (newton * curve) / slope;
+    // Where the curve is all but level Halley's step is small however far the zero is: Newton's leaves the stretch there.
+    const next = s - (Math.abs(bend) < 0.5 ? newton / (1 - bend) : newton);
+    const near = Math.abs(newton) <= last;
+    s = near || (next > from && next < to) ? next : (from + to) / 2; // also where a quotient is none
+    if (near) break;
   }
   stretch[4] = s;
 }

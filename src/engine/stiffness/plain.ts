@@ -136,8 +136,8 @@ export class PlainStiffness {
     if (to === from) return;
     const { x, elements, element } = this;
     for (let e = this.nodeFrom(from); e < elements && x[e]! < to; e++) {
-      const a = from > x[e]! ? from : x[e]!;
-      const b = to < x[e + 1]! ? to : x[e + 1]!;
+      const a = Math.max(from, x[e]!);
+      const b = Math.min(to, x[e + 1]!);
       const middle = (a + b) / 2;
       const reach = (GAUSS * (b - a)) / 2;
       const w = w0 + ((w1 - w0) * (middle - from)) / (to - from);
@@ -151,8 +151,8 @@ export class PlainStiffness {
   private bend(from: number, to: number, kappa: number): void {
     const { x, elements, element } = this;
     for (let e = this.nodeFrom(from); e < elements && x[e]! < to; e++) {
-      const a = from > x[e]! ? from : x[e]!;
-      const b = to < x[e + 1]! ? to : x[e + 1]!;
+      const a = Math.max(from, x[e]!);
+      const b = Math.min(to, x[e + 1]!);
       element[e]!.addCurvature(kappa, a - x[e]!, b - x[e]!);
     }
   }

@@ -18,8 +18,16 @@ export const paths = {
   /** Where a revision of any kind of document is reviewed. */
   review: (kind: string, slug: string, number: number) =>
     `/library/${kind}/${encodeURIComponent(slug)}/revisions/${number}`,
+  /** Where it is withdrawn, with every use in view. */
+  withdrawal: (kind: string, slug: string, number: number) =>
+    `/library/${kind}/${encodeURIComponent(slug)}/revisions/${number}/withdraw`,
+  libraryDraft: (kind: string, slug: string, number: number) =>
+    `/library/${kind}/${encodeURIComponent(slug)}/drafts/${number}`,
+  newDocument: '/library/new',
   recall: (id: string) => `/library/recalls/${encodeURIComponent(id)}`,
   request: (number: number) => `/library/requests/${number}`,
+  /** The form for a request, with the screen that it is raised from. */
+  newRequest: (from: string) => `/library/requests/new?from=${encodeURIComponent(from)}`,
   sections: '/sections',
   section: (table: string, designation: string) =>
     `/sections/${encodeURIComponent(table)}/${encodeURIComponent(designation)}`,

@@ -48,6 +48,7 @@ export function listOpenRevisions(actor: Actor, { state, kind }: Narrowing): Pro
         state: row.state,
         unfinished: unfinishedOf(row.body) !== null,
         author: own.name(row.authorId),
+        mine: row.authorId === actor.personId || row.editorIds.includes(actor.personId),
         proposal: !librarians.has(row.authorId),
         created_at: row.createdAt.toISOString(),
         submitted_at: row.submittedAt?.toISOString() ?? null,

@@ -82,6 +82,8 @@ export const OpenRevision = z.strictObject({
   state: z.enum(REVISION_STATES),
   unfinished: z.boolean(),
   author: z.string(),
+  /** Whether the reader wrote or changed it. */
+  mine: z.boolean(),
   /** A draft by somebody who is no librarian. */
   proposal: z.boolean(),
   created_at: z.iso.datetime(),

@@ -2,6 +2,7 @@ import { closeConnection } from '@/db/client';
 import { sweepSignIns } from '@/features/account/sweep.server';
 import { BEAT, beat } from '@/features/admin/health.server';
 import { verifyAllChains } from '@/features/audit/audit.server';
+import { resumeImpacts, runImpact } from '@/features/impact/weigh.server';
 import { keepSending, readMailing } from '@/features/notice/mailer.server';
 import { proveIssued, resumeProofs, runProof } from '@/features/proof/prove.server';
 import { remindOfReviews } from '@/features/review/remind.server';
@@ -23,11 +24,13 @@ const handlers: Handlers = {
     log.info('reminded of reviews', await remindOfReviews());
   },
   'run-proof': runProof,
+  'run-impact': runImpact,
 };
 
 /** Goes on with what a worker that is gone left behind. */
 async function resumeRuns(): Promise<void> {
   await resumeProofs();
+  await resumeImpacts();
 }
 
 /** Works the queue, and gives a sign of life: late by one database failover, never dead by it. */

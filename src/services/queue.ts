@@ -18,12 +18,13 @@ export interface RunTask {
 /** What is asked for, with what it is about. */
 export interface Asked {
   readonly 'run-proof': RunTask;
+  readonly 'run-impact': RunTask;
 }
 
 export type ClockTask = keyof typeof SCHEDULE;
 export type AskedTask = keyof Asked;
 const CLOCK_TASKS = Object.keys(SCHEDULE) as readonly ClockTask[];
-const ASKED_TASKS = ['run-proof'] as const satisfies readonly AskedTask[];
+const ASKED_TASKS = ['run-proof', 'run-impact'] as const satisfies readonly AskedTask[];
 
 /** The library's own, from which it sends what is due by the clock. */
 const CLOCK_QUEUE = '__pgboss__send-it';

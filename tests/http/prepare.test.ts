@@ -111,6 +111,7 @@ describe('the role that web and worker sign in with', () => {
       'prove-issued': idle,
       'remind-of-reviews': idle,
       'run-proof': idle,
+      'run-impact': idle,
     };
     const queue = await workQueue(appUrl, handlers, () => undefined);
     await sender.send('sweep-sign-ins', {});

@@ -57,22 +57,24 @@ export type MemberReading =
   | { readonly ok: true; readonly evaluation: MemberEvaluation }
   | { readonly ok: false; readonly faults: readonly ParameterFault[] };
 
-const refused = (path: readonly (string | number)[], code: string, message: string): MemberReading => ({
+type Refusal = Extract<MemberReading, { ok: false }>;
+
+const refused = (path: readonly (string | number)[], code: string, message: string): Refusal => ({
   ok: false,
   faults: [{ path, code, message }],
 });
 
-const inParameters = (faults: readonly ParameterFault[]): MemberReading => ({
+const inParameters = (faults: readonly ParameterFault[]): Refusal => ({
   ok: false,
   faults: faults.map((fault) => ({ ...fault, path: ['parameters', ...fault.path] })),
 });
 
-/**
- * Solves and checks a member: each load group alone and all of them together, proven by the second method, and every
- * combination of the criteria over all patterns as sums of them. Pure: the browser shows while a value is dragged what
- * the server stores on saving. Refused with the path of each fault in the member's inputs.
- */
-export function evaluateMember(inputs: MemberInputs): MemberReading {
+type InstanceReading =
+  | { readonly ok: true; readonly instance: Instance; readonly section: ResolvedSection | null }
+  | Refusal;
+
+/** The beam that a member's inputs make, before it is solved. */
+export function instanceOf(inputs: MemberInputs): InstanceReading {
   const { template } = inputs;
   const values = readParameters(template, inputs.parameters);
   if (!values.ok) return inParameters(values.faults);
@@ -85,8 +87,18 @@ export function evaluateMember(inputs: MemberInputs): MemberReading {
     selfWeight: inputs.ownWeight ? section?.selfWeight : undefined,
     redundants: inputs.redundants,
   });
-  if (!made.ok) return inParameters(made.faults);
-  const { instance } = made;
+  return made.ok ? { ok: true, instance: made.instance, section } : inParameters(made.faults);
+}
+
+/**
+ * Solves and checks a member: each load group alone and all of them together, proven by the second method, and every
+ * combination of the criteria over all patterns as sums of them. Pure: the browser shows while a value is dragged what
+ * the server stores on saving. Refused with the path of each fault in the member's inputs.
+ */
+export function evaluateMember(inputs: MemberInputs): MemberReading {
+  const made = instanceOf(inputs);
+  if (!made.ok) return made;
+  const { instance, section } = made;
   const reading = readBeam({ ...instance.beam, horizontal: 'ignore' });
   if (!reading.ok) return inParameters(reading.faults.map((fault) => ({ ...fault, path: [] })));
   const beam = reading.value;

@@ -7,6 +7,7 @@ import { type Actor, type Found, type JobRow, openJob, type Page, touchJob } fro
 import { decideByUpgrade } from '@/features/review/recall.server';
 import { AppError, invalid, stale } from '@/lib/app-error';
 import { type Assessment, assessMember } from './assess.server';
+import { carryOver } from './carry';
 import type { MemberItem, MemberView, NewMember, SaveMember, TriedView, TryMember } from './member';
 import { loadPins, moveTemplate, type Pins, placeCriteria, placeSection, placeTemplate } from './pins.server';
 import { findMember, pageOfMembers, requireMember, type Settings, toMemberView } from './row.server';
@@ -150,14 +151,6 @@ const choiceOf = (section: Pins['section']): SaveMember['section'] =>
     table: section.row.table,
     material: section.material.id,
   };
-
-/** What is given for another revision of the template: without the parameters that it has no longer. */
-function carryOver(from: Template, to: Template, given: SaveMember['parameters']): SaveMember['parameters'] {
-  const has = ({ parameters }: Template, symbol: string) => parameters.some((one) => one.symbol === symbol);
-  return Object.fromEntries(
-    Object.entries(given).filter(([symbol]) => has(to, symbol) || !has(from, symbol)),
-  );
-}
 
 /** Every parameter of the template, so that a member says all of what it was evaluated at. */
 const whole = ({ parameters }: Template, given: SaveMember['parameters']): SaveMember['parameters'] => ({

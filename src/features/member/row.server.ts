@@ -16,7 +16,8 @@ const creator = aliasedTable(person, 'creator');
 const changer = aliasedTable(person, 'changer');
 const evaluator = aliasedTable(person, 'evaluator');
 
-const stored = {
+/** What the row's documents say. */
+export const stored = {
   parameters: SaveMember.shape.parameters,
   settings: z.strictObject({
     self_weight: z.boolean(),

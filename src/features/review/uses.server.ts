@@ -34,6 +34,12 @@ const toUse = (row: UseRow): Use => ({
   ownerId: row.owner_id,
 });
 
+/** Every member that pins a revision. As usesOfDocument. */
+export async function usesOfRevision(tx: Tx, revisionId: string): Promise<Use[]> {
+  const rows = await tx.execute<UseRow>(sql`select * from uses_of_revision(${revisionId})`);
+  return rows.map(toUse);
+}
+
 /** Every member that pins a revision of a document, with the revision's number; jobs for named people included, so not to be shown to all. */
 export async function usesOfDocument(
   tx: Tx,

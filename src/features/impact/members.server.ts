@@ -1,0 +1,139 @@
+/** Members in bulk, with all that they are evaluated from. */
+import { and, eq, inArray, sql } from 'drizzle-orm';
+import type { Tx } from '@/db/client';
+import { job } from '@/db/schema/job';
+import { member } from '@/db/schema/member';
+import { section } from '@/db/schema/section';
+import { type Criteria, criteriaDocument } from '@/engine/check';
+import { materialFor } from '@/engine/section';
+import type { Template } from '@/engine/template';
+import { ENGINE_VERSION } from '@/engine/version';
+import type { MemberInputs } from '@/features/member/evaluate';
+import { stored } from '@/features/member/row.server';
+import { revisionsById } from '@/features/review/library.server';
+import type { SectionValues } from '@/features/section/resolve';
+import { templateOf } from '@/features/template/template.server';
+import type { Compared } from './figures';
+import type { Found } from './weigh';
+
+/** What members pin, read once for all of them. */
+export class Pinned {
+  private readonly templates = new Map<string, Template>();
+  private readonly criteria = new Map<string, Criteria>();
+  private readonly sections = new Map<string, { key: string; values: SectionValues }>();
+
+  constructor(private readonly practiceId: string) {}
+
+  async load(tx: Tx, rows: readonly MemberRow[]): Promise<void> {
+    const templates = missing(this.templates, rows, (row) => row.templateRevisionId);
+    const criteria = missing(this.criteria, rows, (row) => row.criteriaRevisionId);
+    const revisions = await revisionsById(tx, this.practiceId, [...templates, ...criteria]);
+    for (const one of revisions)
+      if (templates.includes(one.revisionId)) this.templates.set(one.revisionId, templateOf(one));
+      else this.criteria.set(one.revisionId, criteriaDocument.parse(one.body));
+    const sections = missing(this.sections, rows, (row) => row.sectionId);
+    if (sections.length === 0) return;
+    const found = await tx
+      .select({ id: section.id, ...SECTION })
+      .from(section)
+      .where(and(eq(section.practiceId, this.practiceId), inArray(section.id, sections)));
+    for (const { id, key, ...values } of found) this.sections.set(id, { key, values });
+  }
+
+  /** What the member is evaluated from, and the key of its section. */
+  inputsOf(row: MemberRow): { inputs: MemberInputs; sectionKey: string | null } {
+    const settings = stored.settings.parse(row.settings);
+    const pinned = row.sectionId === null ? null : known(this.sections, row.sectionId);
+    const material = pinned && materialFor(row.material ?? '');
+    return {
+      inputs: {
+        template: known(this.templates, row.templateRevisionId),
+        parameters: stored.parameters.parse(row.parameters),
+        system: row.unitSystem,
+        section: pinned && material ? { values: pinned.values, material } : null,
+        criteria: row.criteriaRevisionId === null ? null : known(this.criteria, row.criteriaRevisionId),
+        ownWeight: settings.self_weight,
+        patterns: settings.patterns,
+        redundants: settings.redundants ?? undefined,
+      },
+      sectionKey: pinned?.key ?? null,
+    };
+  }
+}
+
+const SECTION = {
+  key: section.designationKey,
+  designation: section.designation,
+  dimensions: section.dimensions,
+  massKgM: section.massKgM,
+  iMajorCm4: section.iMajorCm4,
+  wElCm3: section.wElCm3,
+};
+
+/** The sections of an edition by their keys. */
+export async function sectionsOf(tx: Tx, practiceId: string, revisionId: string) {
+  const rows = await tx
+    .select(SECTION)
+    .from(section)
+    .where(and(eq(section.practiceId, practiceId), eq(section.revisionId, revisionId)));
+  return new Map(rows.map(({ key, ...values }): [string, SectionValues] => [key, values]));
+}
+
+function missing(
+  there: ReadonlyMap<string, unknown>,
+  rows: readonly MemberRow[],
+  idOf: (row: MemberRow) => string | null,
+): string[] {
+  const ids = rows.map(idOf).filter((id) => id !== null && !there.has(id));
+  return [...new Set(ids)].filter((id) => id !== null);
+}
+
+function known<T>(there: ReadonlyMap<string, T>, id: string): T {
+  const found = there.get(id);
+  if (!found) throw new Error(`A member pins ${id}, which is not there`);
+  return found;
+}
+
+export type MemberRow = Awaited<ReturnType<typeof readMembers>>[number];
+
+/** The members that are open to the person of the transaction, with the figures that were stored of them. */
+export const readMembers = (tx: Tx, practiceId: string, ids: readonly string[]) =>
+  tx
+    .select({
+      id: member.id,
+      templateRevisionId: member.templateRevisionId,
+      criteriaRevisionId: member.criteriaRevisionId,
+      sectionId: member.sectionId,
+      material: member.material,
+      parameters: member.parameters,
+      settings: member.settings,
+      engineVersion: member.engineVersion,
+      unitSystem: job.unitSystem,
+      // The result is large, and unpacked once: what is compared is a small part of it.
+      kind: sql<string | null>`r.kind`,
+      total:
+        sql`jsonb_build_object('reactions', r.total -> 'reactions', 'extremes', r.total -> 'extremes')`.mapWith(
+          member.result,
+        ),
+      checks: sql`jsonb_build_object('rows', r.checks -> 'rows', 'findings', r.checks -> 'findings')`.mapWith(
+        member.result,
+      ),
+    })
+    .from(member)
+    .innerJoin(job, and(eq(job.practiceId, member.practiceId), eq(job.id, member.jobId)))
+    .leftJoin(
+      sql`lateral jsonb_to_record(${member.result}) as r(kind text, total jsonb, checks jsonb)`,
+      sql`true`,
+    )
+    .where(and(eq(member.practiceId, practiceId), sql`${member.id} = any(${sql.param([...ids])}::uuid[])`))
+    .execute();
+
+/** What was stored, where the engine of today stored it; else it has to be found anew. */
+export function storedFigures({ engineVersion, kind, total, checks }: MemberRow): Found | null {
+  if (engineVersion !== ENGINE_VERSION || kind !== 'result') return null;
+  const { rows, findings = [] } = Object(checks);
+  return {
+    ok: true,
+    compared: { total: total as Compared['total'], checks: Array.isArray(rows) ? { rows, findings } : null },
+  };
+}

@@ -1,0 +1,136 @@
+/** A member held against itself with another revision in place of one that it pins. Pure. */
+import type { Criteria } from '@/engine/check';
+import { judgeRules, type Template } from '@/engine/template';
+import { carryOver, parameterChanges } from '@/features/member/carry';
+import { evaluateMember, instanceOf, type MemberInputs } from '@/features/member/evaluate';
+import type { SectionValues } from '@/features/section/resolve';
+import { type Changes, type Compared, changesBetween, isSame } from './figures';
+import type { Weighed } from './impact';
+
+/** What takes the place of what a member pins. */
+export type Replacement =
+  | { readonly kind: 'template'; readonly template: Template }
+  | { readonly kind: 'criteria'; readonly criteria: Criteria }
+  /** By the section's designation key; what is not there is not in the edition. */
+  | { readonly kind: 'section-table'; readonly sections: ReadonlyMap<string, SectionValues> };
+
+/** The figures that are compared, or why there are none. */
+export type Found =
+  | { readonly ok: true; readonly compared: Compared }
+  | { readonly ok: false; readonly message: string };
+
+export function findFigures(inputs: MemberInputs): Found {
+  const reading = evaluateMember(inputs);
+  if (!reading.ok) return { ok: false, message: reading.faults.map(({ message }) => message).join(' ') };
+  const { total, checks, proof } = reading.evaluation;
+  return proof.proven
+    ? { ok: true, compared: { total, checks } }
+    : { ok: false, message: 'The two methods do not agree: there is no result that can be trusted.' };
+}
+
+const NOTHING: Weighed['changes'] = { figures: [], checks: [], findings: { come: [], go: [] } };
+
+/** As stored, with what it is ranked by. */
+export interface Ranked {
+  readonly report: Weighed;
+  readonly flips: number;
+  readonly largestChange: number;
+}
+
+const lost = (message: string, parts: Partial<Weighed> = {}): Ranked => ({
+  report: { outcome: 'lost', message, changes: NOTHING, gone: [], taken: [], ...parts },
+  flips: 0,
+  largestChange: Number.POSITIVE_INFINITY,
+});
+
+export const unread = (message: string): Ranked => ({
+  report: { outcome: 'unread', message, changes: NOTHING, gone: [], taken: [] },
+  flips: 0,
+  largestChange: 0,
+});
+
+/** What a member comes to with the replacement, beside what it came to before. */
+export function weigh(
+  inputs: MemberInputs,
+  before: Found,
+  replacement: Replacement,
+  sectionKey: string | null,
+): Ranked {
+  const changed =
+    replacement.kind === 'template'
+      ? parameterChanges(inputs.template, replacement.template)
+      : { gone: [], taken: [] };
+  const after = replaced(inputs, replacement, sectionKey);
+  if (!after)
+    return lost(`Its section ${inputs.section?.values.designation ?? ''} is not in the new edition.`);
+  if (before.ok && replacement.kind === 'template' && isSameBeam(inputs, after, before.compared))
+    return unchanged(changed);
+  const found = findFigures(after);
+  if (!found.ok) return lost(found.message, changed);
+  const changes = before.ok ? changesBetween(before.compared, found.compared) : fromNothing(found.compared);
+  const { figures, checks, findings } = changes;
+  const isUnchanged = isSame(changes) && changed.gone.length + changed.taken.length === 0;
+  return {
+    report: {
+      outcome: isUnchanged ? 'unchanged' : 'changed',
+      message: before.ok ? null : `It had no result before: ${before.message}`,
+      changes: { figures, checks, findings },
+      ...changed,
+    },
+    flips: changes.flips,
+    largestChange: changes.largest,
+  };
+}
+
+/**
+ * Whether both revisions make the same beam of the member, and no block rule of the new one refuses what is known of it:
+ * then its results are the same without being found again.
+ */
+function isSameBeam(inputs: MemberInputs, after: MemberInputs, { total }: Compared): boolean {
+  const [was, is] = [instanceOf(inputs), instanceOf(after)];
+  if (!was.ok || !is.ok || JSON.stringify(was.instance.beam) !== JSON.stringify(is.instance.beam))
+    return false;
+  const known = { depth: is.section?.depth, ga: null, solution: total };
+  return judgeRules(after.template, is.instance.scope, known, after.system).every(
+    ({ state, severity }) => state !== 'broken' || severity !== 'block',
+  );
+}
+
+const unchanged = (changed: Pick<Weighed, 'gone' | 'taken'>): Ranked => {
+  const { gone, taken } = changed;
+  const outcome = gone.length + taken.length > 0 ? 'changed' : 'unchanged';
+  return {
+    report: { outcome, message: null, changes: NOTHING, ...changed },
+    flips: 0,
+    largestChange: 0,
+  };
+};
+
+/** A member that had no result has changed, whatever it comes to. */
+const fromNothing = (compared: Compared): Changes => ({
+  ...NOTHING,
+  checks: [],
+  flips: compared.checks?.rows.filter(({ ratio }) => ratio > 1).length ?? 0,
+  largest: 1,
+});
+
+function replaced(inputs: MemberInputs, replacement: Replacement, key: string | null): MemberInputs | null {
+  switch (replacement.kind) {
+    case 'template': {
+      const { template } = replacement;
+      // What was typed is of the member's schema, which the server has read.
+      const parameters = carryOver(
+        inputs.template,
+        template,
+        inputs.parameters as Parameters<typeof carryOver>[2],
+      );
+      return { ...inputs, template, parameters };
+    }
+    case 'criteria':
+      return { ...inputs, criteria: replacement.criteria };
+    case 'section-table': {
+      const values = key === null ? undefined : replacement.sections.get(key);
+      return inputs.section && values ? { ...inputs, section: { ...inputs.section, values } } : null;
+    }
+  }
+}

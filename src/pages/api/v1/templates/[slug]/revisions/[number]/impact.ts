@@ -1,0 +1,1 @@
+export { GET, POST } from '../../../../library/[kind]/[slug]/revisions/[number]/impact';

@@ -82,7 +82,7 @@ function figureText(value: number, reading: KindReading, system: UnitSystemName)
 }
 
 /** How what a selector reads is shown: movements in small units, places in large ones. */
-function purposeOfSelector(selector: Selector): Purpose {
+export function purposeOfSelector(selector: Selector): Purpose {
   const dimension = selectorDimension(selector);
   if (dimension === 'force') return 'reaction';
   if (dimension === 'rotation') return 'slope';

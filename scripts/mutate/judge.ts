@@ -1,5 +1,7 @@
+import { join } from 'node:path';
 import { Worker } from 'node:worker_threads';
 import type { Mutant } from './mutants';
+import { ROOT } from './root';
 import type { Answer, Order, Question } from './worker';
 
 /** A test file that takes this many times what it takes unchanged, and these ms, does not end. */
@@ -23,9 +25,9 @@ export class Judge {
   ) {}
 
   /** What catches the mutant: a test by its name, or that it never ends; null where nothing does. */
-  async judge(mutant: Mutant): Promise<string | null> {
+  async judge({ file, source }: Mutant): Promise<string | null> {
     this.worker ??= await this.start();
-    return this.ask({ kind: 'mutant', mutant });
+    return this.ask({ kind: 'mutant', replaced: { path: join(ROOT, file), source } });
   }
 
   async end(): Promise<void> {

@@ -48,15 +48,16 @@ export class Modules {
     return found;
   }
 
-  /** How to load files while one is replaced: what needs it is made anew for this loader, once. */
+  /** How to load files while one is replaced: what needs it is made anew for this loader, once. Throws where it does not parse. */
   loader(replaced?: Replaced): (path: string) => Exports {
     const own = new Map<string, Exports>();
+    const changed = replaced && compile(replaced.path, replaced.source);
     const anew = replaced ? this.dependentsOf(replaced.path) : new Set<string>();
     const load = (path: string): Exports => {
       const made = anew.has(path) ? own : this.shared;
       const known = made.get(path);
       if (known) return known;
-      const module = path === replaced?.path ? compile(path, replaced.source) : this.modules.get(path)!;
+      const module = changed?.path === path ? changed : this.modules.get(path)!;
       const exports: Exports = {};
       made.set(path, exports);
       const require = (name: string) => {

@@ -11,12 +11,11 @@ export type Mutant = {
   inside: string;
   was: string;
   becomes: string;
-  start: number;
-  end: number;
-  text: string;
+  /** The whole file, changed. */
+  source: string;
 };
 
-type Edit = Pick<Mutant, 'start' | 'end' | 'text'>;
+type Edit = { start: number; end: number; text: string };
 
 const OPPOSITE: Readonly<Partial<Record<ts.SyntaxKind, string>>> = {
   [ts.SyntaxKind.PlusToken]: '-',
@@ -155,7 +154,7 @@ function described(edit: Edit, node: ts.Node, source: ts.SourceFile): Mutant {
     inside: functionAround(node),
     was: text.slice(from, to).trim(),
     becomes: (text.slice(from, edit.start) + edit.text + text.slice(edit.end, to)).trim(),
-    ...edit,
+    source: text.slice(0, edit.start) + edit.text + text.slice(edit.end),
   };
 }
 
@@ -167,6 +166,3 @@ function functionAround(node: ts.Node): string {
   }
   return '';
 }
-
-export const mutate = (source: string, { start, end, text }: Edit): string =>
-  source.slice(0, start) + text + source.slice(end);

@@ -1,13 +1,11 @@
-import { readFileSync } from 'node:fs';
 import { dirname, join } from 'node:path';
 import { parentPort, workerData } from 'node:worker_threads';
-import { Modules } from './modules';
-import { type Mutant, mutate } from './mutants';
+import { Modules, type Replaced } from './modules';
 import { ROOT } from './root';
 import { Suite } from './suite';
 
 export type Order = { tests: readonly string[] };
-export type Question = { kind: 'all' } | { kind: 'mutant'; mutant: Mutant };
+export type Question = { kind: 'all' } | { kind: 'mutant'; replaced: Replaced };
 export type Answer =
   | { kind: 'ready' }
   /** Begins with a test file. */
@@ -54,18 +52,9 @@ port.on('message', async (question: Question) => {
     say({ kind: 'done', caught: await firstFailure(modules.loader(), tests) });
     return;
   }
-  const { mutant } = question;
-  const path = join(ROOT, mutant.file);
-  const source = mutate(sourceOf(path), mutant);
-  say({ kind: 'done', caught: await firstFailure(modules.loader({ path, source }), testsOf(path)) });
+  const { replaced } = question;
+  say({ kind: 'done', caught: await firstFailure(modules.loader(replaced), testsOf(replaced.path)) });
 });
-
-const sources = new Map<string, string>();
-function sourceOf(path: string): string {
-  const known = sources.get(path) ?? readFileSync(path, 'utf8');
-  sources.set(path, known);
-  return known;
-}
 
 for (const file of [SETUP, ...tests.map((test) => join(ROOT, test))]) await modules.read(file);
 modules.loader()(SETUP);

@@ -110,24 +110,24 @@ describe('what is nothing is measured by the whole beam', () => {
     expect(reactions[1]!.vertical / (-k * tip)).toBeCloseTo(1, 9);
   });
 
-  test('a free curvature of 1 in an overhang is measured like any other', () => {
+  test('a free curvature of 1 in an overhang, where it may bend the beam, makes no forces', () => {
+    const place = (x: number) => x / 3;
     const { extremes, contraflexure } = solveBeam(
       beam({
-        length: 15.55,
+        length: place(15.55),
         ei: 180,
         supports: [
-          { at: 10.9, kind: 'roller', kr: 97.2 },
-          { at: 13.4, kind: 'fixed' },
-          { at: 7.6, kind: 'roller', kr: 60 },
-          { at: 11.25, kind: 'guided' },
-          { at: 15.55, kind: 'roller' },
+          { at: place(10.9), kind: 'roller', kr: 60 },
+          { at: place(13.4), kind: 'fixed' },
+          { at: place(7.6), kind: 'roller', kr: 180 / 7 },
+          { at: place(11.25), kind: 'guided' },
+          { at: place(15.55), kind: 'roller' },
         ],
-        loads: [{ kind: 'curvature', from: 4.8, to: 6.4, kappa: 1 }],
+        loads: [{ kind: 'curvature', from: place(2.28), to: place(4.56), kappa: 1 }],
       }),
     );
-    expect([extremes.shear, extremes.moment]).toMatchObject(
-      [0, 0].map((value) => ({ max: { value }, min: { value } })),
-    );
+    const { shear, moment } = extremes;
+    expect([shear.max.value, shear.min.value, moment.max.value, moment.min.value]).toEqual([0, 0, 0, 0]);
     expect(contraflexure).toEqual([]);
   });
 });

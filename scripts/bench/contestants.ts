@@ -8,6 +8,8 @@ import { mathjs, mlMatrix, type Peer } from './peers';
 
 /** Elements per span of the finer peers. */
 const FINE = 50;
+/** Goes round the variants, whose number is a power of two. */
+const MASK = VARIANTS - 1;
 
 /**
  * Every contestant takes each beam anew: its geometry, its loads, the reactions, and V, M, θ and v at eleven stations.
@@ -39,7 +41,7 @@ export const others = (beams: readonly Beam[]): Contestant[] => [
   {
     name: 'Putlog, the solver of 32 digits',
     run: (k) => {
-      solveBeam(beams[k % VARIANTS]!);
+      solveBeam(beams[k & MASK]!);
     },
   },
 ];
@@ -49,7 +51,7 @@ function ours(beams: readonly Beam[], check: boolean): (k: number) => void {
   const vertical = new Float64Array(beams[0]!.supports.length);
   const moment = new Float64Array(beams[0]!.supports.length);
   return (k) => {
-    if (!solver.take(beams[k % VARIANTS]!)) throw new Error('a beam of the bench is no continuous one');
+    if (!solver.take(beams[k & MASK]!)) throw new Error('a beam of the bench is no continuous one');
     solver.solve();
     solver.readReactions(vertical, moment);
     solver.extremes();
@@ -61,5 +63,5 @@ function ours(beams: readonly Beam[], check: boolean): (k: number) => void {
 const theirs =
   (beams: readonly Beam[], solve: Peer): ((k: number) => void) =>
   (k) => {
-    solve(beams[k % VARIANTS]!);
+    solve(beams[k & MASK]!);
   };

@@ -1,4 +1,4 @@
-/** Where Newton's step is this part of the piece, Halley's is the last: the one after it, its cube, would be rounding. */
+/** Where Newton's step is this part of the piece, Chebyshev's is the last: the one after it, its cube, would be rounding. */
 const STEP = 1e-6;
 const STEPS = 100; // bisection alone needs 60
 
@@ -29,7 +29,8 @@ export const quartic = (c: Float64Array, s: number): number =>
 
 /**
  * The zero of a quartic c between stretch[0] and stretch[1], where its values are stretch[2] and stretch[3], of opposite
- * signs, and it is monotone, into stretch[4]: Halley's method from the chord, kept inside by bisection.
+ * signs, and it is monotone, into stretch[4]: Chebyshev's method from the chord, Newton's where the curve bends too much for
+ * it, kept inside by bisection.
  */
 export function findMonotoneZero(c: Float64Array, stretch: Float64Array): void {
   const c0 = c[0]!;
@@ -49,10 +50,10 @@ export function findMonotoneZero(c: Float64Array, stretch: Float64Array): void {
     const curve = c2 + s * (3 * c3 + s * 6 * c4); // half the second derivative
     if (value < 0 === rises) from = s;
     else to = s;
-    const newton = value / slope;
-    const bend = (newton * curve) / slope;
-    // Where the curve is all but level Halley's step is small however far the zero is: Newton's leaves the stretch there.
-    const next = s - (Math.abs(bend) < 0.5 ? newton / (1 - bend) : newton);
+    const inverse = 1 / slope;
+    const newton = value * inverse;
+    const bend = newton * curve * inverse;
+    const next = s - (Math.abs(bend) < 0.5 ? newton * (1 + bend) : newton);
     const near = Math.abs(newton) <= last;
     s = near || (next > from && next < to) ? next : (from + to) / 2; // also where a quotient is none
     if (near) break;

@@ -1,3 +1,4 @@
+import { askImpact } from '@/features/impact/impact.server';
 import { askProof } from '@/features/proof/proof.server';
 import { NewComment, ReturnStep } from '@/features/review/comment';
 import { addComment, resolveComment } from '@/features/review/comment.server';
@@ -11,7 +12,7 @@ import { type Reading, read } from '@/lib/read';
 import { paths } from '@/paths';
 import { attempt, type Outcome, textOf, unknownAct } from './form';
 
-/** Takes a form of the review page: a comment, a reply, a proof, or a step. */
+/** Takes a form of the review page: a comment, a reply, a proof, an impact, or a step. */
 export const takeReviewForm = (actor: Actor, key: RevisionKey, form: FormData): Promise<Outcome> =>
   attempt(async () => {
     const here = paths.review(key.kind, key.slug, key.number);
@@ -39,6 +40,9 @@ export const takeReviewForm = (actor: Actor, key: RevisionKey, form: FormData): 
       case 'prove':
         await askProof(actor, key);
         return `${here}?done=prove#proof`;
+      case 'weigh':
+        await askImpact(actor, key, { from: 0, limit: 1, outcome: undefined });
+        return `${here}?done=weigh#impact`;
       case 'submit':
       case 'return':
       case 'issue':

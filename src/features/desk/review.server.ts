@@ -1,4 +1,4 @@
-import type { ProofView } from '@/features/proof/proof';
+import { readImpact } from '@/features/impact/impact.server';
 import { readProof } from '@/features/proof/proof.server';
 import { listComments } from '@/features/review/comment.server';
 import { readDocument } from '@/features/review/document.server';
@@ -9,13 +9,17 @@ import type { Actor } from '@/features/review/rows.server';
 import { AppError, notFound } from '@/lib/app-error';
 import { changesBetween } from './changes';
 
+/** Members that the review lists at once. */
+const IMPACT_PAGE = 100;
+
 /** A revision as it is reviewed: itself, what it changes, its proof and what was said of it. */
-export async function readReview(actor: Actor, key: RevisionKey) {
-  const [document, draft, comments, proof] = await Promise.all([
+export async function readReview(actor: Actor, key: RevisionKey, impactFrom: number) {
+  const [document, draft, comments, proof, impact] = await Promise.all([
     readDocument(actor, key),
     readDraft(actor, key),
     listComments(actor, key),
-    proofOf(actor, key),
+    isProven(key.kind) ? orNull(readProof(actor, key)) : null,
+    orNull(readImpact(actor, key, { from: impactFrom, limit: IMPACT_PAGE, outcome: undefined })),
   ]);
   const entry = document.revisions.find(({ number }) => number === key.number);
   if (!entry) throw notFound('This revision');
@@ -27,6 +31,7 @@ export async function readReview(actor: Actor, key: RevisionKey) {
     draft,
     comments,
     proof,
+    impact,
     base,
     changes: before ? changesBetween(before.document, draft.document) : [],
   };
@@ -43,10 +48,10 @@ function comparedWith(
   return found?.number ?? null;
 }
 
-async function proofOf(actor: Actor, key: RevisionKey): Promise<ProofView | null> {
-  if (!isProven(key.kind)) return null;
+/** Null where nobody asked for it yet. */
+async function orNull<T>(found: Promise<T>): Promise<T | null> {
   try {
-    return await readProof(actor, key);
+    return await found;
   } catch (error) {
     if (error instanceof AppError && error.code === 'not_found') return null;
     throw error;

@@ -28,6 +28,8 @@ export default defineConfig({
           include: ['src/**/*.test.{ts,tsx}', 'tests/{properties,published}/**/*.test.ts'],
           exclude: ['**/*.server.test.ts'],
           setupFiles: 'tests/support/seed.ts',
+          // Sweeps of the parameter box take seconds on a machine that does other things as well.
+          testTimeout: 30_000,
         },
       },
       {

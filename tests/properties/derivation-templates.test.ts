@@ -11,6 +11,8 @@ const SYSTEMS = ['metric', 'us'] as const;
 /** More redundants than this are worked with matrices, and their sets are too many to go through. */
 const MOST = 3;
 
+const DEFAULTS = 'defaults';
+
 type Case = { name: string; beam: Beam; instance: Instance };
 
 const optionsOf = (ei: string | undefined) => {
@@ -22,7 +24,7 @@ const optionsOf = (ei: string | undefined) => {
 function casesOf(slug: string): Case[] {
   const template = shippedTemplate(slug);
   const given = [
-    { name: 'defaults', parameters: {}, options: {} },
+    { name: DEFAULTS, parameters: {}, options: {} },
     ...template.proof_cases.map(({ name, parameters, ei }) => ({ name, parameters, options: optionsOf(ei) })),
   ];
   return given.map(({ name, parameters, options }) => {
@@ -74,13 +76,22 @@ const inputOf = ({ beam, instance }: Case, redundants: readonly Redundant[] | un
 const setsOf = ({ beam, instance }: Case) =>
   beam.degree <= MOST ? [...admissibleSets(beam)] : [instance.beam.redundants];
 
+/** Of more sets than this, proof cases take so many from all through the list: the defaults have taken each. */
+const SAMPLE = 12;
+
+function triedSets(one: Case): ReturnType<typeof setsOf> {
+  const sets = setsOf(one);
+  if (one.name === DEFAULTS || sets.length <= SAMPLE) return sets;
+  return Array.from({ length: SAMPLE }, (_, k) => sets[Math.floor((k * sets.length) / SAMPLE)]);
+}
+
 describe.each([...writtenTemplates.keys()])('%s', (slug) => {
-  test('every admissible set, at the defaults and at every proof case, recalculates in both unit systems', {
+  test('every admissible set at the defaults, and sets at every proof case, recalculate in both unit systems', {
     timeout: 300_000,
   }, () => {
     const counts: Checked = nothingChecked();
     for (const one of casesOf(slug)) {
-      for (const redundants of setsOf(one)) {
+      for (const redundants of triedSets(one)) {
         for (const system of SYSTEMS) {
           const where = `${slug}, ${one.name}, ${JSON.stringify(redundants)}, ${system}`;
           const steps = derive({ ...inputOf(one, redundants), system });

@@ -1,5 +1,5 @@
 import { expect, test } from 'vitest';
-import { jsonText, lineAt, linesOf, parseJson } from './json';
+import { jsonText, lineAt, linesOf, namedFirst, parseJson } from './json';
 
 const document = {
   name: 'A "b" {',
@@ -38,4 +38,9 @@ test.each([
   const reading = parseJson(text);
   expect(reading.ok).toBe(false);
   expect(reading.ok ? '' : reading.message).toMatch(message);
+});
+
+test('what a document is called stands first, and nothing is lost', () => {
+  const ordered = namedFirst({ use: [], name: 'A', beam: {}, reference: 'B' });
+  expect(Object.keys(ordered)).toEqual(['reference', 'name', 'use', 'beam']);
 });

@@ -38,6 +38,14 @@ function unkeepable(value: unknown, depth: number): string | null {
   return null;
 }
 
+const FIRST = ['reference', 'name', 'summary'] as const;
+
+/** The document with what it is called first: the database keeps no order of keys. */
+export const namedFirst = (document: Readonly<Written>): Written => ({
+  ...Object.fromEntries(FIRST.filter((key) => key in document).map((key) => [key, document[key]])),
+  ...Object.fromEntries(Object.entries(document).filter(([key]) => !FIRST.some((one) => one === key))),
+});
+
 /** The text of a document as it is shown and edited. */
 export const jsonText = (value: unknown): string => JSON.stringify(value, null, 2);
 

@@ -1,3 +1,4 @@
+import { type EnvelopeTask, envelopeTask } from '@/engine/envelope/index';
 import { type Beam, type Load, readBeam, type SupportDocument } from '@/engine/model/index';
 
 /** Beams of one case, alike but for spans and loads that vary a little, so that no solve can rest on the one before. */
@@ -36,7 +37,7 @@ function propped(k: number): Beam {
 }
 
 /** Equal spans but for the wobble, under a uniform load, and a point load within each span if asked for. */
-export function spans(count: number, k: number, pointed: boolean): Beam {
+function spans(count: number, k: number, pointed: boolean): Beam {
   const at = [0];
   for (let j = 0; j < count; j++) at.push(at[j]! + 6 * wobble(k + 37 * j));
   const length = at[count]!;
@@ -52,3 +53,22 @@ export const CASES: readonly Case[] = [
 ];
 
 export const evenSpans = (count: number): Beam[] => variants((k) => spans(count, k, false));
+
+/** Six unequal spans under a permanent load and a patterned one, in ten combinations. */
+export const ENVELOPE: EnvelopeTask = envelopeTask(
+  beamOf(
+    36,
+    [0, 6, 12.5, 18, 24.2, 30, 36].map((x): SupportDocument => ({ at: x, kind: 'roller' })),
+    [
+      { ...uniform(36, 5e3), group: 'G' },
+      { ...uniform(36, 8e3), group: 'Q' },
+    ],
+  ),
+  {
+    combinations: Array.from({ length: 10 }, (_, k) => ({
+      name: `${k + 1}`,
+      factors: { G: 0.9 + 0.05 * k, Q: 1.5 - 0.1 * k },
+    })),
+    patterns: ['Q'],
+  },
+);

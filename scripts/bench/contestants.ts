@@ -1,7 +1,8 @@
-import { solveBeam } from '@/engine/beam/index';
+import { solveBeam, stationPositions } from '@/engine/beam/index';
 import { ContinuousBeam } from '@/engine/continuous/index';
+import { type EnvelopeTask, SuperposedBeam, solveEnvelope } from '@/engine/envelope/index';
 import type { Beam } from '@/engine/model/index';
-import { VARIANTS } from './cases';
+import { ENVELOPE, VARIANTS } from './cases';
 import { STATIONS } from './frame';
 import type { Contestant } from './measure';
 import { mathjs, mlMatrix, type Peer } from './peers';
@@ -45,6 +46,46 @@ export const others = (beams: readonly Beam[]): Contestant[] => [
     },
   },
 ];
+
+/** An exact envelope over all combinations and patterns, and a single solve of the same beam by the same solver. */
+export const envelopes = ({ beam, sources, combinations }: EnvelopeTask = ENVELOPE): Contestant[] => {
+  const stations = stationPositions(beam, STATIONS);
+  const solver = new ContinuousBeam();
+  const elementary = () => {
+    solver.take(beam);
+    return sources.map(({ group, loads }) => {
+      solver.solve(loads, { movements: group === null });
+      return { diagrams: solver.diagrams(), reactions: solver.reactions() };
+    });
+  };
+  return [
+    {
+      name: 'a single solve, 32 digits',
+      run: () => {
+        solveBeam(beam);
+      },
+    },
+    {
+      name: 'the envelope, 32 digits',
+      run: () => {
+        solveEnvelope(ENVELOPE, stations);
+      },
+    },
+    {
+      name: 'a single solve, fast',
+      run: ours(
+        Array.from({ length: VARIANTS }, () => beam),
+        false,
+      ),
+    },
+    {
+      name: 'the envelope, of fast solves',
+      run: () => {
+        new SuperposedBeam(sources, elementary()).envelope(combinations, stations);
+      },
+    },
+  ];
+};
 
 function ours(beams: readonly Beam[], check: boolean): (k: number) => void {
   const solver = new ContinuousBeam();

@@ -17,7 +17,8 @@ export function row(timing: Timing, reference?: Timing): void {
   );
 }
 
-/** What the figure is to be at least, beside what it is. */
-export function target(what: string, is: number, least: number): void {
-  console.info(`  ${is >= least ? 'met   ' : 'MISSED'}  ${what}: ${figures(is)}, to be at least ${least}`);
+/** What the figure is to be, at least or at most, beside what it is. */
+export function target(what: string, is: number, limit: number, side: 'least' | 'most' = 'least'): void {
+  const met = side === 'least' ? is >= limit : is <= limit;
+  console.info(`  ${met ? 'met   ' : 'MISSED'}  ${what}: ${figures(is)}, to be at ${side} ${limit}`);
 }

@@ -16,7 +16,7 @@ import { Sweep } from './sweep';
 const SHORT = 1e-4;
 
 /** The largest and the smallest value of each quantity, each with one position where it is attained, m. */
-export type FastExtremes = Pick<ExtremeFinder, 'shear' | 'moment' | 'slope' | 'deflection'>;
+type FastExtremes = Pick<ExtremeFinder, 'shear' | 'moment' | 'slope' | 'deflection'>;
 
 /**
  * The fast solver of continuous beams, for sweeps, patterns and moving loads: the force method in plain doubles, its
@@ -29,9 +29,9 @@ export type FastExtremes = Pick<ExtremeFinder, 'shear' | 'moment' | 'slope' | 'd
  *   solver.stations(11), solver.diagrams(), solver.reactions()
  *   solver.take(otherBeam);                        // goes on in the same memory
  *
- * Geometry is done once in `take`, loads in `solve`, extremes and stations when they are asked for. None of it makes
- * objects: what `extremes` and `stations` answer is written over by the next solve, what `diagrams` and `reactions` answer
- * is the caller's. Units and signs: the engine's. Right to about twelve digits; `proven` tells where it is not.
+ * Geometry is done once in `take`, loads in `solve`, extremes and stations when they are asked for, all in the same memory:
+ * what `extremes`, `stations` and `prove` answer is written over by the next. What `diagrams` and `reactions` answer is new
+ * each time. Units and signs: the engine's. Right to about twelve digits; `isProven` tells where it is not.
  */
 export class ContinuousBeam {
   private readonly geometry = new Geometry();

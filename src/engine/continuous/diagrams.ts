@@ -2,33 +2,41 @@ import type { Diagrams } from '../beam/index';
 import type { Piecewise } from '../polynomial/index';
 import type { Geometry } from './geometry';
 
-/** The diagrams as the beam solver's: exact piecewise polynomials, all of one beam on the same breaks. */
+/** The diagrams as the beam solver's: exact piecewise polynomials, all of one beam on the same breaks. Never −0. */
 export function diagramsOf({ points, piece, states }: Geometry): Diagrams {
   const breaks = new Float64Array(points);
-  const pieces = points - 1;
+  for (let k = 0; k < points; k++) breaks[k] = piece[k]!.from;
   const diagram = (degree: number): Piecewise => ({
     breaks,
     degree,
-    coefficients: new Float64Array(pieces * (degree + 1)),
+    coefficients: new Float64Array((points - 1) * (degree + 1)),
   });
-  const [shear, moment, slope, deflection] = [diagram(2), diagram(3), diagram(4), diagram(5)];
-  for (let k = 0; k < pieces; k++) {
-    const { from, bending: b, shearing: g, start, rate, curvature } = piece[k]!;
-    breaks[k] = from;
-    const V = [states[8 * k]! + 0, 0 - start, 0 - rate / 2] as const;
-    const M = [states[8 * k + 1]! + 0, V[0], V[1] / 2, V[2] / 3] as const;
-    const theta = [
-      states[8 * k + 2]! + 0,
-      b * M[0] + curvature - g * V[1],
-      (b * M[1]) / 2 - g * V[2],
-      (b * M[2]) / 3,
-      (b * M[3]) / 4,
-    ];
-    shear.coefficients.set(V, 3 * k);
-    moment.coefficients.set(M, 4 * k);
-    slope.coefficients.set(theta, 5 * k);
-    deflection.coefficients.set([states[8 * k + 3]! + 0, ...theta.map((c, j) => c / (j + 1))], 6 * k);
+  const shear = diagram(2);
+  const moment = diagram(3);
+  const slope = diagram(4);
+  const deflection = diagram(5);
+  for (let k = 0; k + 1 < points; k++) {
+    const { bending: b, shearing: g, start, rate, curvature } = piece[k]!;
+    const V = states[8 * k]! + 0;
+    const M = states[8 * k + 1]! + 0;
+    const first = b * M + curvature + g * start;
+    const second = (b * V + g * rate) / 2;
+    write(shear, k, [V, 0 - start, 0 - rate / 2]);
+    write(moment, k, [M, V, 0 - start / 2, 0 - rate / 6]);
+    write(slope, k, [states[8 * k + 2]! + 0, first, second, 0 - (b * start) / 6, 0 - (b * rate) / 24]);
+    integrate(slope, deflection, k, states[8 * k + 3]! + 0);
   }
-  breaks[pieces] = piece[pieces]!.from;
   return { shear, moment, slope, deflection };
+}
+
+function write({ coefficients }: Piecewise, k: number, values: readonly number[]): void {
+  const first = k * values.length;
+  for (let j = 0; j < values.length; j++) coefficients[first + j] = values[j]!;
+}
+
+function integrate(slope: Piecewise, deflection: Piecewise, k: number, start: number): void {
+  deflection.coefficients[6 * k] = start;
+  for (let j = 0; j < 5; j++) {
+    deflection.coefficients[6 * k + j + 1] = slope.coefficients[5 * k + j]! / (j + 1);
+  }
 }

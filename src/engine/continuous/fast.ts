@@ -3,12 +3,10 @@ import type { Beam, Load } from '../model/index';
 import { extremes } from '../polynomial/index';
 import { ContinuousBeam } from './continuous-beam';
 
-/** What solved it: plain doubles, or the 32 digits of engine/beam. */
-export type SolvedBy = 'doubles' | 'wide';
+/** `by`: what solved it, plain doubles or the 32 digits of engine/beam. */
+type FastSolution = { by: 'doubles' | 'wide'; reactions: Reaction[]; diagrams: Diagrams; extremes: Extremes };
 
-export type FastSolution = { by: SolvedBy; reactions: Reaction[]; diagrams: Diagrams; extremes: Extremes };
-
-export type FastBeam = {
+type FastBeam = {
   beam: Beam;
   /** As of `prepareBeam`. `check: false` takes the doubles' word for it, in a sweep that checks a sample. */
   solve(loads?: readonly Load[], options?: { movements?: boolean; check?: boolean }): FastSolution;

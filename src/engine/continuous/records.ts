@@ -69,11 +69,3 @@ export class Piece {
   force = NaN;
   couple = NaN;
 }
-
-/** Where V, M, θ and v stand among the eight numbers of a piece's ends: just inside its left end, then its right end. */
-export const SHEAR = 0;
-export const MOMENT = 1;
-export const SLOPE = 2;
-export const DEFLECTION = 3;
-export const END = 4;
-export const STATE = 8;

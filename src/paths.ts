@@ -13,6 +13,11 @@ export const paths = {
   templateRevision: (slug: string, number: number) =>
     `/templates/${encodeURIComponent(slug)}/revisions/${number}`,
   templateDraft: (slug: string, number: number) => `/templates/${encodeURIComponent(slug)}/drafts/${number}`,
+  /** What a template was proven by, on one sheet. */
+  passport: (slug: string, number: number) =>
+    `/templates/${encodeURIComponent(slug)}/revisions/${number}/passport`,
+  comparison: (slug: string, from: number, to: number) =>
+    `/templates/${encodeURIComponent(slug)}/compare?from=${from}&to=${to}`,
   library: '/library',
   libraryDocument: (kind: string, slug: string) => `/library/${kind}/${encodeURIComponent(slug)}`,
   /** Where a revision of any kind of document is reviewed. */
@@ -62,6 +67,8 @@ export const paths = {
     drafts: (kind: string, slug: string) => `/api/v1/library/${kind}/${encodeURIComponent(slug)}/drafts`,
     draft: (kind: string, slug: string, number: number) =>
       `/api/v1/library/${kind}/${encodeURIComponent(slug)}/drafts/${number}`,
+    templateRevision: (slug: string, number: number) =>
+      `/api/v1/templates/${encodeURIComponent(slug)}/revisions/${number}`,
     revision: (kind: string, slug: string, number: number) =>
       `/api/v1/library/${kind}/${encodeURIComponent(slug)}/revisions/${number}`,
     recall: (id: string) => `/api/v1/recalls/${encodeURIComponent(id)}`,

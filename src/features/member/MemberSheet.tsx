@@ -53,7 +53,7 @@ export function MemberSheet({ data }: { readonly data: WorkspaceData }) {
   return (
     <>
       <Head data={data} work={work} />
-      <PinNotices member={work.member} />
+      <PinNotices member={work.member} host={upgradeHost(data, work, readAgain)} />
       <SaveNotice
         saving={work.saving}
         body={work.body}
@@ -95,6 +95,20 @@ export function MemberSheet({ data }: { readonly data: WorkspaceData }) {
     </>
   );
 }
+
+/** What the notices of newer revisions upgrade the member by. */
+const upgradeHost = ({ job, template, mayEdit }: WorkspaceData, work: Work, onUpgraded: () => void) => ({
+  job: job.number,
+  system: job.unitSystem,
+  template,
+  barred: mayEdit
+    ? work.isDirty
+      ? 'Save what you typed first.'
+      : null
+    : 'Members are changed by engineers.',
+  body: work.body,
+  onUpgraded,
+});
 
 function Head({ data: { job, template }, work: { member, draft, live } }: PartProps) {
   const governing = live.evaluation?.checks?.rows[0];

@@ -2,40 +2,45 @@ import { useEffect, useRef, useState } from 'react';
 import { Button } from '@/components/ui/Button';
 import { Radio } from '@/components/ui/Choice';
 import { Notice } from '@/components/ui/Notice';
+import { Upgrade, type UpgradeHost } from '@/features/impact/Upgrade';
 import { paths } from '@/paths';
-import type { MemberView, Pin, SaveMember } from './member';
+import type { MemberView, Moves, Pin, SaveMember } from './member';
 import type { SaveState } from './use-member';
 import { bodyOf, differencesOf, settle } from './workspace';
 
-/** What is newer in the library than what the member pins. It is said; nothing is upgraded. */
-export function PinNotices({ member }: { readonly member: MemberView }) {
+interface PinNoticesProps {
+  readonly member: MemberView;
+  readonly host: UpgradeHost;
+}
+
+/** What is to be known of what the member pins, and what is newer: shown before and after, upgraded when it is pressed. */
+export function PinNotices({ member, host }: PinNoticesProps) {
   const { template, criteria, section } = member;
-  const lines = [template, ...(criteria ? [criteria] : [])].flatMap((pin) => [
-    ...pinLine(pin),
-    ...factLines(`${pin.reference} revision ${pin.revision}`, pin),
-  ]);
-  const edition: Line[] = [
+  const lines = [
+    ...pinLine(template, (template_revision) => ({ template_revision })),
+    ...factLines(`${template.reference} revision ${template.revision}`, template),
+    ...(criteria
+      ? [
+          ...pinLine(criteria, (criteria_revision) => ({ criteria_revision })),
+          ...factLines(`${criteria.reference} revision ${criteria.revision}`, criteria),
+        ]
+      : []),
     ...(section ? editionLines(section) : []),
-    ...(section?.newer == null
-      ? []
-      : [
-          {
-            title: `Edition ${section.newer} of ${section.table_name} is issued. This member still uses edition ${section.edition}.`,
-            detail: 'Its section keeps the figures of that edition.',
-            tone: 'caution' as const,
-          },
-        ]),
   ];
-  return [...lines, ...edition].map(({ title, detail, tone, recall }) => (
-    <Notice key={title} title={title} tone={tone}>
-      <p>{detail}</p>
-      {recall && (
-        <p>
-          <a href={paths.recall(recall)}>Open the recall</a>
-        </p>
-      )}
-    </Notice>
-  ));
+  return lines.map(({ title, detail, tone, recall, upgrade }) =>
+    upgrade ? (
+      <Upgrade key={title} {...{ title, detail, tone, member, host }} moves={upgrade.moves} to={upgrade.to} />
+    ) : (
+      <Notice key={title} title={title} tone={tone}>
+        <p>{detail}</p>
+        {recall && (
+          <p>
+            <a href={paths.recall(recall)}>Open the recall</a>
+          </p>
+        )}
+      </Notice>
+    ),
+  );
 }
 
 interface Line {
@@ -43,6 +48,8 @@ interface Line {
   readonly detail: string;
   readonly tone: 'caution' | 'error';
   readonly recall?: string;
+  /** What the member can be moved to. */
+  readonly upgrade?: { readonly moves: Moves; readonly to: string };
 }
 
 type Facts = Pick<Pin, 'recall' | 'review' | 'review_by' | 'withdrawn_ancestor'>;
@@ -89,16 +96,32 @@ function editionLines(section: NonNullable<MemberView['section']>): Line[] {
           },
         ]
       : [];
-  return [...withdrawn, ...factLines(name, section)];
+  const newer: Line[] =
+    section.newer === null
+      ? []
+      : [
+          {
+            title: `Edition ${section.newer} of ${section.table_name} is issued. This member still uses edition ${section.edition}.`,
+            detail: 'Its section keeps the figures of that edition until it is upgraded.',
+            tone: 'caution',
+            upgrade: { moves: { section_edition: section.newer }, to: `edition ${section.newer}` },
+          },
+        ];
+  return [...withdrawn, ...factLines(name, section), ...newer];
 }
 
-function pinLine({ reference, revision, state, newer, newer_note, withdrawal_reason }: Pin): Line[] {
+function pinLine(
+  { reference, revision, state, newer, newer_note, withdrawal_reason }: Pin,
+  movesTo: (newer: number) => Moves,
+): Line[] {
+  const upgrade = newer === null ? {} : { upgrade: { moves: movesTo(newer), to: `revision ${newer}` } };
   if (state === 'withdrawn')
     return [
       {
         title: `${reference} revision ${revision} was withdrawn: ${withdrawal_reason}`,
         detail: `This member still uses it.${newer === null ? '' : ` Revision ${newer} is issued.`} Check what the fault means here before the member goes on.`,
         tone: 'error',
+        ...upgrade,
       },
     ];
   return newer === null
@@ -108,6 +131,7 @@ function pinLine({ reference, revision, state, newer, newer_note, withdrawal_rea
           title: `${reference} revision ${newer} is issued. This member still uses revision ${revision}.`,
           detail: newer_note ?? '',
           tone: 'caution',
+          ...upgrade,
         },
       ];
 }

@@ -1,8 +1,8 @@
 import { z } from 'zod';
 import type { Benchmark } from '@/engine/template/proof-effect';
 import { type Change, changesBetween } from '@/features/desk/changes';
-import { purposeOfSelector } from '@/features/template/lines';
 import { DOCUMENT_KINDS, REVISION_STATES } from '@/features/review/review';
+import { purposeOfSelector } from '@/features/template/lines';
 
 /** What a difference is about. */
 export const PARTS = ['parameters', 'formulas', 'limits', 'beam', 'proof', 'sources', 'text'] as const;

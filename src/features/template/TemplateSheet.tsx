@@ -230,7 +230,10 @@ function Block({ data, action }: { readonly data: TemplatePageData; readonly act
       revision={String(row.revision)}
       revisions={data.history}
       action={action}
-      others={[{ label: 'Print this page', onPress: () => window.print() }]}
+      others={[
+        { label: 'Passport', href: paths.passport(row.slug, row.revision) },
+        { label: 'Print this page', onPress: () => window.print() },
+      ]}
     />
   );
 }

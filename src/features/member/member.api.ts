@@ -12,7 +12,7 @@ export type Saving =
 const problem = z.object({
   detail: z.string(),
   errors: z.array(z.object({ pointer: z.string(), code: z.string(), message: z.string() })),
-  current: z.unknown(),
+  current: z.unknown().optional(),
 });
 
 const LOST = 'The server does not answer. Nothing typed is lost; save again in a moment.';

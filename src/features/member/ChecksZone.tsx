@@ -5,6 +5,8 @@ import type { CheckRow, MemberChecks } from '@/engine/check';
 import { formatFor, type UnitSystemName } from '@/engine/quantity';
 import { Formula } from '@/features/template/Formula';
 import { useLater, useNear } from '@/features/template/use-live';
+import { Why } from '@/features/why/Why';
+import { WhyGrid } from '@/features/why/WhyGrid';
 
 interface ChecksZoneProps {
   readonly checks: MemberChecks | null;
@@ -26,41 +28,47 @@ export function ChecksZone({ checks, system, missing }: ChecksZoneProps) {
       </ZoneHeading>
       {checks === null && <p className="text-ink-2">{missing}</p>}
       {checks && (
-        <table className="schedule entries">
-          <thead>
-            <tr>
-              <th scope="col">Check</th>
-              <th scope="col">Value on limit</th>
-              <th scope="col">Utilisation</th>
-            </tr>
-          </thead>
-          <tbody>
-            {checks.rows.map((row, index) => (
-              <tr
-                key={row.id}
-                data-governing={index === 0 ? '' : undefined}
-                className="max-md:grid-cols-[minmax(0,1fr)_auto]"
-              >
-                <th scope="row" className="max-md:col-span-2">
-                  {row.title}
-                  <Working row={row} set={kit?.setTex} />
-                </th>
-                <td className="whitespace-nowrap">{valueOnLimit(row, system)}</td>
-                <td>
-                  <UtilisationTick ratio={row.ratio} width={64} />
-                </td>
+        <WhyGrid>
+          <table className="schedule entries">
+            <thead>
+              <tr>
+                <th scope="col">Check</th>
+                <th scope="col">Value on limit</th>
+                <th scope="col">Utilisation</th>
               </tr>
-            ))}
-            {checks.findings.map((finding) => (
-              <tr key={finding.id}>
-                <th scope="row">{finding.title}</th>
-                <td colSpan={2}>
-                  <b className="font-semibold text-ochre-ink">Needs a fixing.</b> {finding.detail}
-                </td>
-              </tr>
-            ))}
-          </tbody>
-        </table>
+            </thead>
+            <tbody>
+              {checks.rows.map((row, index) => (
+                <tr
+                  key={row.id}
+                  data-governing={index === 0 ? '' : undefined}
+                  className="max-md:grid-cols-[minmax(0,1fr)_auto]"
+                >
+                  <th scope="row" className="max-md:col-span-2">
+                    {row.title}
+                    <Working row={row} set={kit?.setTex} />
+                  </th>
+                  <td className="whitespace-nowrap">
+                    <ValueOnLimit row={row} system={system} />
+                  </td>
+                  <td>
+                    <Why question={() => ({ kind: 'check', row, figure: 'ratio' })}>
+                      <UtilisationTick ratio={row.ratio} width={64} />
+                    </Why>
+                  </td>
+                </tr>
+              ))}
+              {checks.findings.map((finding) => (
+                <tr key={finding.id}>
+                  <th scope="row">{finding.title}</th>
+                  <td colSpan={2}>
+                    <b className="font-semibold text-ochre-ink">Needs a fixing.</b> {finding.detail}
+                  </td>
+                </tr>
+              ))}
+            </tbody>
+          </table>
+        </WhyGrid>
       )}
     </section>
   );
@@ -107,8 +115,15 @@ function Working({
   );
 }
 
-function valueOnLimit({ kind, demand, capacity }: CheckRow, system: UnitSystemName): string {
-  const purpose = kind === 'deflection' ? 'deflection' : 'stress';
-  const [figure] = formatFor(demand, purpose, system).split('\u00a0');
-  return `${figure} on ${formatFor(capacity, purpose, system)}`;
+function ValueOnLimit({ row, system }: Pick<ChecksZoneProps, 'system'> & { readonly row: CheckRow }) {
+  const purpose = row.kind === 'deflection' ? 'deflection' : 'stress';
+  const [figure] = formatFor(row.demand, purpose, system).split('\u00a0');
+  return (
+    <>
+      <Why question={() => ({ kind: 'check', row, figure: 'demand' })}>{figure}</Why> on{' '}
+      <Why question={() => ({ kind: 'check', row, figure: 'capacity' })}>
+        {formatFor(row.capacity, purpose, system)}
+      </Why>
+    </>
+  );
 }

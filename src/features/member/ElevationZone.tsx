@@ -2,6 +2,7 @@ import { useMemo, useState } from 'react';
 import { ZoneHeading } from '@/components/ui/ZoneHeading';
 import type { UnitSystemName } from '@/engine/quantity';
 import { BeamResults } from '@/features/template/BeamResults';
+import { loadingOf } from '@/features/why/member-loading';
 import type { Live } from './use-member';
 import { stripViews } from './views';
 
@@ -25,6 +26,7 @@ export function ElevationZone({ live, system, notDrawn, onEdit }: ElevationZoneP
     () => shown && view && { dimensions: shown.instance.dimensions, loadNames: view.loadNames },
     [shown, view],
   );
+  const loading = useMemo(() => (shown && view ? loadingOf(shown, view) : undefined), [shown, view]);
   const isLive = live.evaluation !== null;
   const drawn = useMemo(() => (isLive ? view?.draw() : undefined), [isLive, view]);
   return (
@@ -60,6 +62,7 @@ export function ElevationZone({ live, system, notDrawn, onEdit }: ElevationZoneP
           depth={shown?.section?.depth}
           notDrawn={notDrawn}
           onEdit={onEdit}
+          loading={loading}
         />
       ) : (
         <p className="px-(--pad) pb-20 text-ink-2">{notDrawn}</p>

@@ -6,7 +6,11 @@ import type { Governing } from '@/engine/envelope';
 import type { Load } from '@/engine/model';
 import { letteredSupports } from '@/engine/model';
 import { formatFor, type UnitSystemName } from '@/engine/quantity';
+import type { Acting } from '@/engine/why';
 import { drawnName } from '@/features/template/names';
+import { actingGroup, governingActing } from '@/features/why/member-loading';
+import { Why } from '@/features/why/Why';
+import { WhyGrid } from '@/features/why/WhyGrid';
 import type { MemberEvaluation } from './evaluate';
 import { groupName } from './views';
 
@@ -41,31 +45,35 @@ export function LoadGroupsZone({ evaluation, system }: ZoneProps) {
         Load groups
       </ZoneHeading>
       {evaluation && (
-        <table className="schedule">
-          <thead>
-            <tr>
-              <th scope="col">Group</th>
-              <th scope="col">Kind</th>
-              <th scope="col">Load</th>
-            </tr>
-          </thead>
-          <tbody>
-            {evaluation.beam.loads.map((load, index) => {
-              const name = evaluation.instance.loadNames[index];
-              return (
-                // biome-ignore lint/suspicious/noArrayIndexKey: a load has no identity but its place in the beam
-                <tr key={index}>
-                  <th scope="row">
-                    {groupName(load.group ?? '')}{' '}
-                    <i className="font-normal">{name && <RichHtml text={drawnName(name.tex)} />}</i>
-                  </th>
-                  <td>{KINDS[load.kind]}</td>
-                  <td>{loadText(load, system)}</td>
-                </tr>
-              );
-            })}
-          </tbody>
-        </table>
+        <WhyGrid>
+          <table className="schedule">
+            <thead>
+              <tr>
+                <th scope="col">Group</th>
+                <th scope="col">Kind</th>
+                <th scope="col">Load</th>
+              </tr>
+            </thead>
+            <tbody>
+              {evaluation.beam.loads.map((load, index) => {
+                const name = evaluation.instance.loadNames[index];
+                return (
+                  // biome-ignore lint/suspicious/noArrayIndexKey: a load has no identity but its place in the beam
+                  <tr key={index}>
+                    <th scope="row">
+                      {groupName(load.group ?? '')}{' '}
+                      <i className="font-normal">{name && <RichHtml text={drawnName(name.tex)} />}</i>
+                    </th>
+                    <td>{KINDS[load.kind]}</td>
+                    <td>
+                      <Why question={() => ({ kind: 'load', index })}>{loadText(load, system)}</Why>
+                    </td>
+                  </tr>
+                );
+              })}
+            </tbody>
+          </table>
+        </WhyGrid>
       )}
     </section>
   );
@@ -86,32 +94,34 @@ export function ReactionsZone({ evaluation, system }: ZoneProps) {
       {evaluation && (
         // biome-ignore lint/a11y/noNoninteractiveTabindex: a wide table is scrolled by the keyboard too
         <section aria-label="Reactions" tabIndex={0} className="overflow-x-auto">
-          <table className="schedule">
-            <thead>
-              <tr>
-                <th scope="col">Support</th>
-                {evaluation.groups.map(({ group }) => (
-                  <th key={group} scope="col" className="figure">
-                    {groupName(group)}
+          <WhyGrid>
+            <table className="schedule">
+              <thead>
+                <tr>
+                  <th scope="col">Support</th>
+                  {evaluation.groups.map(({ group }) => (
+                    <th key={group} scope="col" className="figure">
+                      {groupName(group)}
+                    </th>
+                  ))}
+                  <th scope="col" className="figure">
+                    All
                   </th>
+                  <th scope="col" className="figure">
+                    Most<small>strength</small>
+                  </th>
+                  <th scope="col" className="figure">
+                    Least<small>strength</small>
+                  </th>
+                </tr>
+              </thead>
+              <tbody>
+                {reactionRows(evaluation).map((row) => (
+                  <ReactionRow key={row.name} row={row} evaluation={evaluation} system={system} />
                 ))}
-                <th scope="col" className="figure">
-                  All
-                </th>
-                <th scope="col" className="figure">
-                  Most<small>strength</small>
-                </th>
-                <th scope="col" className="figure">
-                  Least<small>strength</small>
-                </th>
-              </tr>
-            </thead>
-            <tbody>
-              {reactionRows(evaluation).map((row) => (
-                <ReactionRow key={row.name} row={row} system={system} />
-              ))}
-            </tbody>
-          </table>
+              </tbody>
+            </table>
+          </WhyGrid>
         </section>
       )}
     </section>
@@ -119,19 +129,25 @@ export function ReactionsZone({ evaluation, system }: ZoneProps) {
 }
 
 interface ReactionRowProps {
+  readonly evaluation: MemberEvaluation;
   readonly row: ReturnType<typeof reactionRows>[number];
   readonly system: UnitSystemName;
 }
 
-function ReactionRow({ row, system }: ReactionRowProps) {
-  const { name, purpose, groups, total, most, least } = row;
+function ReactionRow({ row, evaluation, system }: ReactionRowProps) {
+  const { name, purpose, groups, total, most, least, support, component } = row;
   const text = (value: number) => formatFor(value, purpose, system);
+  const asked = (value: number, acting: Acting | null) => (
+    <Why question={() => acting && { kind: 'reaction', support, component, acting }}>{text(value)}</Why>
+  );
+  const governed = (governing: NonNullable<typeof most>) =>
+    asked(governing.value, governingActing(evaluation, governing.by));
   return (
     <tr>
       <th scope="row">{name}</th>
       {groups.map(({ group, value, range }) => (
         <td key={group} className="figure">
-          {text(value)}
+          {asked(value, actingGroup(group))}
           {range && (
             <Under>
               {text(range.min)} to {text(range.max)}
@@ -139,13 +155,13 @@ function ReactionRow({ row, system }: ReactionRowProps) {
           )}
         </td>
       ))}
-      <td className="figure">{text(total)}</td>
+      <td className="figure">{asked(total, { kind: 'all' })}</td>
       <td className="figure">
-        {most === null ? '–' : text(most.value)}
+        {most === null ? '–' : governed(most)}
         {most && <Under>{most.of}</Under>}
       </td>
       <td className="figure">
-        {least === null ? '–' : text(least.value)}
+        {least === null ? '–' : governed(least)}
         {purpose === 'reaction' && (least?.value ?? total) < -1e-6 && (
           <b className="ml-6 font-semibold text-ochre-ink">uplift</b>
         )}
@@ -173,6 +189,8 @@ function reactionRows({ beam, groups, groupReactions, total, strength, nameOf }:
         return typeof own === 'object' ? own : null;
       };
       return {
+        support: index,
+        component,
         name: `${letters.get(index) ?? ''}, ${words}`,
         purpose: component === 'vertical' ? ('reaction' as const) : ('moment' as const),
         groups: groups.map(({ group, solution }) => ({
@@ -206,5 +224,6 @@ function reactionRows({ beam, groups, groupReactions, total, strength, nameOf }:
 
 const named = (governing: Governing, nameOf: ArrangementNamer) => ({
   value: governing.value,
+  by: governing,
   of: nameOf(governing),
 });

@@ -10,6 +10,8 @@ import { type Cause, stopTitle, toCauses } from '@/features/template/faults';
 import { ParameterFields } from '@/features/template/ParameterFields';
 import { RedundantChoice } from '@/features/template/RedundantChoice';
 import { releaseKey, toRedundant, toRelease } from '@/features/template/release';
+import type { About } from '@/features/why/subject';
+import { WhyScope } from '@/features/why/WhyScope';
 import { paths } from '@/paths';
 import { BasisFields } from './BasisFields';
 import { BasisZone } from './BasisZone';
@@ -51,7 +53,7 @@ export function MemberSheet({ data }: { readonly data: WorkspaceData }) {
   };
   const system = data.job.unitSystem;
   return (
-    <>
+    <WhyScope about={() => aboutMember(data, work)} onField={editField}>
       <Head data={data} work={work} />
       <PinNotices member={work.member} host={upgradeHost(data, work, readAgain)} />
       <SaveNotice
@@ -92,8 +94,24 @@ export function MemberSheet({ data }: { readonly data: WorkspaceData }) {
           </div>
         </aside>
       </div>
-    </>
+    </WhyScope>
   );
+}
+
+/** The member as it stands in the fields; null where that gives no result. */
+function aboutMember(data: WorkspaceData, { live, inputs, draft, member }: Work): About | null {
+  if (!live.evaluation) return null;
+  const { section } = draft;
+  const isPinned =
+    member.section?.designation === section?.values.designation && member.section?.table === section?.table;
+  return {
+    kind: 'member',
+    inputs,
+    evaluation: live.evaluation,
+    revision: member.template.revision,
+    section: section && { ...section, origin: section.origin ?? (isPinned ? data.sectionOrigin : undefined) },
+    criteriaRevision: data.criteria.find(({ slug }) => slug === draft.criteria)?.revision ?? null,
+  };
 }
 
 /** What the notices of newer revisions upgrade the member by. */

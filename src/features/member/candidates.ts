@@ -1,6 +1,6 @@
 import type { CheckKind } from '@/engine/check';
 import { materialFor } from '@/engine/section';
-import { type SectionItem, toSectionValues } from '@/features/section/section';
+import { type SectionItem, toRowOrigin, toSectionValues } from '@/features/section/section';
 import { usualMaterial } from '@/features/template/section-pick';
 import { evaluateMember, type MemberInputs } from './evaluate';
 import type { DraftSection } from './workspace';
@@ -40,7 +40,12 @@ export function draftSection(item: SectionItem, current: DraftSection | null): D
   const values = toSectionValues(item);
   const usual = usualMaterial(values, item.table);
   const isAlike = current !== null && usualMaterial(current.values, current.table) === usual;
-  return { values, table: item.table, material: isAlike ? current.material : usual };
+  return {
+    values,
+    table: item.table,
+    origin: toRowOrigin(item),
+    material: isAlike ? current.material : usual,
+  };
 }
 
 export type Utilisation = { readonly [K in CheckKind]: number | null };

@@ -37,6 +37,8 @@ export interface StripView {
   readonly name: string;
   readonly beam: Beam;
   readonly loadNames: readonly NamedLoad[];
+  /** Of loads that act at once: which. */
+  readonly of?: MemberArrangement;
   /** Worked out when it is shown. */
   readonly draw: () => Drawn;
 }
@@ -136,7 +138,7 @@ function arrangementView(
   of: MemberArrangement,
 ): StripView {
   const draw = () => ({ solution: solveArrangement(of) });
-  return { id: name, name, beam: arrangementBeam(of), loadNames: UNNAMED, draw };
+  return { id: name, name, beam: arrangementBeam(of), loadNames: UNNAMED, of, draw };
 }
 
 /** Forces of the strength combinations and deflections of the service combinations, over all patterns. */

@@ -6,6 +6,7 @@ import { withPractice } from '@/db/tenancy';
 import { may } from '@/features/account/permission';
 import { listCriteria } from '@/features/criteria/criteria.server';
 import { type Actor, openJob } from '@/features/job/job.server';
+import { toRowOrigin } from '@/features/section/section';
 import { loadPins } from './pins.server';
 import { requireMember, toMemberView } from './row.server';
 import { changesOf, type HistoryLine, type WorkspaceData } from './workspace';
@@ -32,6 +33,7 @@ export async function readWorkspace(user: Actor, number: string, mark: string): 
       job: { number: job.number, name: job.name, unitSystem: job.unitSystem },
       template: template.document,
       section: section?.row.values ?? null,
+      sectionOrigin: section ? toRowOrigin(section.row) : undefined,
       criteria: pinned ? [pinned, ...others] : others,
       history: await historyOf(tx, user.practiceId, row.id),
       // The database opened the job to this person; what is left to ask is the role.

@@ -5,6 +5,7 @@ import type { UnitSystemName } from '@/engine/quantity';
 import { materialFor } from '@/engine/section';
 import type { Template } from '@/engine/template';
 import type { SectionValues } from '@/features/section/resolve';
+import type { RowOrigin } from '@/features/section/section';
 import { type Raw, toParameters, toRaw } from '@/features/template/raw';
 import type { MemberInputs } from './evaluate';
 import type { MemberView, SaveMember } from './member';
@@ -29,6 +30,8 @@ export interface WorkspaceData {
   readonly job: { readonly number: string; readonly name: string; readonly unitSystem: UnitSystemName };
   readonly template: Template;
   readonly section: SectionValues | null;
+  /** Where the pinned section's values stand. */
+  readonly sectionOrigin?: RowOrigin | undefined;
   readonly criteria: readonly CriteriaChoice[];
   readonly history: readonly HistoryLine[];
   readonly mayEdit: boolean;
@@ -37,6 +40,7 @@ export interface WorkspaceData {
 export interface DraftSection {
   readonly values: SectionValues;
   readonly table: string;
+  readonly origin?: RowOrigin | undefined;
   readonly material: string;
 }
 

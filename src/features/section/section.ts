@@ -101,6 +101,21 @@ export const toSectionValues = (item: SectionItem): SectionValues => ({
   wElCm3: item.w_el_cm3,
 });
 
+/** Where a section's values stand; the table's name where it is known. */
+export interface RowOrigin {
+  readonly tableName?: string | undefined;
+  readonly edition: number;
+  /** Columns that were computed from the dimensions, not supplied. */
+  readonly computed: readonly string[];
+}
+
+/** Only that of an item or a row which has more. */
+export const toRowOrigin = ({ tableName, edition, computed }: RowOrigin): RowOrigin => ({
+  tableName,
+  edition,
+  computed,
+});
+
 /** What stands beside a section table's CSV: where it comes from and how it is read. */
 export const sectionTableMetaSchema = z.strictObject({
   slug: z.string().regex(/^[a-z0-9]+(-[a-z0-9]+)*$/),

@@ -1,4 +1,5 @@
-import { type ComponentProps, memo, useMemo, useState } from 'react';
+import { type ComponentProps, memo, useContext, useMemo, useState } from 'react';
+import type { AskedStation } from '@/components/drawing/asked';
 import { ElevationStrip, type ElevationStripProps } from '@/components/drawing/ElevationStrip';
 import { DRAWING_FORMATS } from '@/components/drawing/quantity-format';
 import { StationTable } from '@/components/drawing/StationTable';
@@ -6,6 +7,10 @@ import type { Solution } from '@/engine/beam';
 import type { Beam } from '@/engine/model';
 import type { UnitSystemName } from '@/engine/quantity';
 import type { Instance } from '@/engine/template';
+import { figureKey, type Loading, stationKey, UNFACTORED } from '@/features/why/keys';
+import { Why } from '@/features/why/Why';
+import { WhyGrid } from '@/features/why/WhyGrid';
+import { WhyContext } from '@/features/why/why-context';
 import { drawnName } from './names';
 import { useRestedValue } from './use-live';
 
@@ -25,6 +30,8 @@ interface BeamResultsProps
   readonly notDrawn?: string | undefined;
   /** Called with a parameter's symbol when its figure on the drawing is pressed. */
   readonly onEdit?: ((symbol: string) => void) | undefined;
+  /** Which loads act, for whoever asks where a number comes from. */
+  readonly loading?: Loading | undefined;
 }
 
 /** The member with its diagrams, named in the template's letters, and the same as a table. */
@@ -35,8 +42,10 @@ export function BeamResults({
   system,
   notDrawn,
   onEdit,
+  loading = UNFACTORED,
   ...more
 }: BeamResultsProps) {
+  const ask = useContext(WhyContext);
   const format = DRAWING_FORMATS[system];
   const symbols = useMemo(() => symbolsOf(instance), [instance]);
   const edit = onEdit && ((drawn: string) => onEdit(symbolOf(instance, drawn)));
@@ -49,12 +58,23 @@ export function BeamResults({
         symbols={symbols}
         format={format}
         onEditFigure={solution ? edit : undefined}
+        onAsk={
+          ask && solution
+            ? (figure, pressed) => ask(() => figureKey(figure, solution, loading), pressed)
+            : undefined
+        }
         dashed={solution === null}
         notDrawn={notDrawn}
       />
       {solution && (
         <div className="px-(--pad) pb-10">
-          <RestedTable beam={beam} solution={solution} envelopes={more.envelopes} format={format} />
+          <RestedTable
+            beam={beam}
+            solution={solution}
+            envelopes={more.envelopes}
+            format={format}
+            loading={loading}
+          />
         </div>
       )}
     </>
@@ -64,10 +84,25 @@ export function BeamResults({
 const Table = memo(StationTable);
 
 /** Nobody reads a table that is folded away, or while a value is dragged: the frame is the drawing's. */
-function RestedTable({ beam, solution, envelopes, format }: ComponentProps<typeof StationTable>) {
+function RestedTable({ beam, solution, envelopes, format, loading }: RestedTableProps) {
   const [isOpen, setOpen] = useState(false);
-  const stated = useMemo(() => ({ beam, solution, envelopes, format }), [beam, solution, envelopes, format]);
-  return <Table {...useRestedValue(stated, isOpen ? undefined : null)} onToggle={setOpen} />;
+  const stated = useMemo(() => {
+    const cell = (at: AskedStation, figure: string) => (
+      <Why question={() => stationKey(at, solution, loading)}>{figure}</Why>
+    );
+    return { beam, solution, envelopes, format, cell };
+  }, [beam, solution, envelopes, format, loading]);
+  return (
+    <WhyGrid>
+      <Table {...useRestedValue(stated, isOpen ? undefined : null)} onToggle={setOpen} />
+    </WhyGrid>
+  );
+}
+
+interface RestedTableProps
+  extends Pick<ComponentProps<typeof StationTable>, 'beam' | 'envelopes' | 'format'> {
+  readonly solution: NonNullable<BeamResultsProps['solution']>;
+  readonly loading: Loading;
 }
 
 const symbolsOf = ({ dimensions, loadNames }: Named) => ({

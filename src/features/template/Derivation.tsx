@@ -1,6 +1,7 @@
 import { RichHtml } from '@/components/drawing/marks/RichHtml';
 import type { DerivationStep } from '@/engine/derivation';
 import { unitText } from '@/engine/quantity';
+import { WhyStep } from '@/features/why/WhyStep';
 import { WideFormula } from './WideFormula';
 import { isLong, type WorkedSteps } from './worked';
 
@@ -52,7 +53,9 @@ function Step({ steps, index, formulaOf }: StepProps) {
         <span
           className={`col-start-3 text-right font-semibold whitespace-nowrap max-md:col-span-2 max-md:col-start-1 ${key ? 'text-[1.1875rem]' : 'text-[1rem]'}`}
         >
-          {display} <small className="text-schedule font-normal text-ink-2">{unitText(unit)}</small>
+          <WhyStep id={step.id}>
+            {display} <small className="ml-4 text-schedule font-normal text-ink-2">{unitText(unit)}</small>
+          </WhyStep>
         </span>
       )}
       {note && (

@@ -111,7 +111,10 @@ const Equation = memo(function Equation({ beam, solution, redundants }: Equation
 });
 
 /** What is released: the person's choice where it is admissible still, else the template's. */
-function redundantsOf({ beam, solution }: SolvedCase, releases: readonly Release[] | null): Redundant[] {
+export function redundantsOf(
+  { beam, solution }: Pick<SolvedCase, 'beam' | 'solution'>,
+  releases: readonly Release[] | null,
+): Redundant[] {
   const own = solution.forceMethod.redundants;
   if (releases === null) return own;
   const asked = releases.map((release) => toRedundant(beam, release));

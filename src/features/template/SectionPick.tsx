@@ -27,12 +27,12 @@ export function SectionPick({ section, system, fault, onPick }: SectionPickProps
   // What was pressed gives way to something else, which takes the focus.
   const goTo = (part: 'select' | 'input') =>
     requestAnimationFrame(() => host.current?.querySelector<HTMLElement>(part)?.focus());
-  const take = (part: Kit, { table, values }: FoundSection, material?: string) => {
+  const take = (part: Kit, { table, values, origin }: FoundSection, material?: string) => {
     const materials = part.materialsFor(values);
     const wanted = material ?? part.usualMaterial(values, table);
     const made = materials.find(({ id }) => id === wanted) ?? materials[0];
     if (!made) return;
-    const pick = part.pickSection(table, values, made);
+    const pick = part.pickSection(table, values, made, origin);
     setMessage(pick.ok ? null : pick.message);
     if (!pick.ok) return;
     onPick(pick.section);

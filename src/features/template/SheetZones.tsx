@@ -2,6 +2,7 @@ import { memo, type ReactNode } from 'react';
 import { RichHtml } from '@/components/drawing/marks/RichHtml';
 import { ZoneHeading } from '@/components/ui/ZoneHeading';
 import type { Template } from '@/engine/template';
+import { Why } from '@/features/why/Why';
 import { Formula } from './Formula';
 import { type ProofLine, type ResultLine, type RuleLine, sourceText } from './lines';
 
@@ -119,7 +120,9 @@ export function ClosedForms({ results, formulas }: ClosedFormsProps) {
         <li key={id} className="border-b border-rule py-6">
           <div className="flex items-baseline gap-10">
             <span className="min-w-0 flex-1 text-schedule text-ink-2">{name}</span>
-            <b className="font-semibold whitespace-nowrap">{text}</b>
+            <b className="font-semibold whitespace-nowrap">
+              <Why question={() => ({ kind: 'closed form', id })}>{text}</Why>
+            </b>
           </div>
           <div className="overflow-x-auto overflow-y-hidden py-3 [&_.katex]:text-[1em]!">
             <Formula html={formulas[`${tex} = ${formula}`] ?? ''} />

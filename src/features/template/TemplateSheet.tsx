@@ -4,11 +4,13 @@ import { TitleBlock } from '@/components/ui/TitleBlock';
 import { TitleStrip } from '@/components/ui/TitleStrip';
 import { useKeys } from '@/components/ui/use-keys';
 import { ZoneHeading } from '@/components/ui/ZoneHeading';
+import type { About } from '@/features/why/subject';
+import { WhyScope } from '@/features/why/WhyScope';
 import { paths } from '@/paths';
 import { BeamResults } from './BeamResults';
 import { Causes } from './Causes';
 import type { TemplateEvaluation } from './evaluate';
-import { ForceMethod } from './ForceMethod';
+import { ForceMethod, redundantsOf } from './ForceMethod';
 import { fieldFaults, putRightFirst, toCauses, toDrawingFault } from './faults';
 import { AxialRule } from './further/AxialRule';
 import { FurtherZone } from './further/FurtherZone';
@@ -16,7 +18,7 @@ import { type AxialState, useAxial } from './further/use-axial';
 import { toResultLines, toRuleLines } from './lines';
 import { ParameterFields } from './ParameterFields';
 import { dayText, type TemplatePageData } from './page';
-import { entryText } from './raw';
+import { entryText, toParameters } from './raw';
 import { ClosedForms, Notes, ProofCases, proofNote, Validity, Zone } from './SheetZones';
 import { StiffnessFields } from './StiffnessFields';
 import { useInSight, useRestedValue } from './use-live';
@@ -28,7 +30,7 @@ export function TemplateSheet({ data }: { readonly data: TemplatePageData }) {
   const action = useAction(data, page);
   const { row } = data;
   return (
-    <>
+    <WhyScope about={() => aboutPage(data, page)} onField={focusField}>
       <div className="flex flex-col">
         <ParametersZone data={data} page={page} />
         <ElevationZone data={data} page={page} />
@@ -43,8 +45,24 @@ export function TemplateSheet({ data }: { readonly data: TemplatePageData }) {
         revision={String(row.revision)}
         action={{ ...action, keyName: undefined }}
       />
-    </>
+    </WhyScope>
   );
+}
+
+/** The page at its last good values, which are those that it shows. */
+function aboutPage({ row, system, template }: TemplatePageData, { good, releases }: Page): About {
+  const { evaluation, values } = good;
+  const ei = entryText(values.ei, 'bending_stiffness');
+  return {
+    kind: 'template',
+    evaluation,
+    revision: row.revision,
+    parameters: toParameters(template, values.raw),
+    system,
+    section: values.section,
+    ei: values.section || ei === template.stiffness.default_ei ? null : ei,
+    redundants: redundantsOf(evaluation, releases),
+  };
 }
 
 type Page = ReturnType<typeof useTemplatePage>;

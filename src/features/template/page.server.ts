@@ -6,6 +6,7 @@ import type { Template } from '@/engine/template';
 import { ENGINE_VERSION } from '@/engine/version';
 import { may, type Person } from '@/features/account/permission';
 import { chooseSection } from '@/features/section/choose.server';
+import { toRowOrigin } from '@/features/section/section';
 import { AppError } from '@/lib/app-error';
 import { initialsOf } from '@/lib/initials';
 import { OWN_STIFFNESS, readStiffness, readValues, type Stiffness } from './address';
@@ -75,7 +76,7 @@ async function sectionOf(
   try {
     const key = { designation, table: table === '' ? undefined : table };
     const found = await withPractice(viewer, (tx) => chooseSection(tx, viewer.practiceId, key));
-    const pick = pickSection(found.table, found.values, material);
+    const pick = pickSection(found.table, found.values, material, toRowOrigin(found));
     return pick.ok ? { section: pick.section, fault: null } : { section: null, fault: pick.message };
   } catch (error) {
     if (error instanceof AppError && error.code === 'invalid') return { section: null, fault: error.message };

@@ -2,6 +2,7 @@
 import type { UnitSystemName } from '@/engine/quantity';
 import type { Template } from '@/engine/template';
 import type { SectionValues } from '@/features/section/resolve';
+import type { RowOrigin } from '@/features/section/section';
 import { evaluateTemplate, type SectionOfTemplate, type TemplateEvaluating } from './evaluate';
 import type { ProofLine } from './lines';
 import { entryText, type Raw, toParameters } from './raw';
@@ -12,6 +13,7 @@ import type { WorkedSteps } from './worked';
 /** A section that gives the stiffness. */
 export interface PickedSection {
   readonly table: string;
+  readonly origin?: RowOrigin | undefined;
   readonly values: SectionValues;
   readonly material: string;
   readonly materialName: string;

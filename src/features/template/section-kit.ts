@@ -1,7 +1,7 @@
 /** The part of the page's script that looks sections up: fetched when somebody begins to search. */
 
 import type { SectionValues } from '@/features/section/resolve';
-import { toSectionValues } from '@/features/section/section';
+import { type RowOrigin, toRowOrigin, toSectionValues } from '@/features/section/section';
 import { fetchSections } from '@/features/section/section.api';
 
 export { materialsFor, pickSection, usualMaterial } from './section-pick';
@@ -9,6 +9,7 @@ export { materialsFor, pickSection, usualMaterial } from './section-pick';
 export interface FoundSection {
   readonly table: string;
   readonly values: SectionValues;
+  readonly origin?: RowOrigin | undefined;
 }
 
 const MOST = '6';
@@ -16,5 +17,9 @@ const MOST = '6';
 /** The best answers to a designation, however typed. */
 export async function searchSections(q: string, signal: AbortSignal): Promise<FoundSection[]> {
   const { items } = await fetchSections({ q, limit: MOST }, signal);
-  return items.map((item) => ({ table: item.table, values: toSectionValues(item) }));
+  return items.map((item) => ({
+    table: item.table,
+    values: toSectionValues(item),
+    origin: toRowOrigin(item),
+  }));
 }

@@ -1,5 +1,6 @@
 import { MATERIALS, type Material } from '@/engine/section';
 import { resolveSection, type SectionValues } from '@/features/section/resolve';
+import type { RowOrigin } from '@/features/section/section';
 import type { PickedSection } from './page';
 
 /** What a section may be made of, the usual one first. */
@@ -27,13 +28,18 @@ export type PickOutcome =
   | { readonly ok: false; readonly message: string };
 
 /** A section of a table, made of a material. */
-export function pickSection(table: string, values: SectionValues, material: Material): PickOutcome {
+export function pickSection(
+  table: string,
+  values: SectionValues,
+  material: Material,
+  origin?: RowOrigin | undefined,
+): PickOutcome {
   const resolution = resolveSection(values, material);
   if (!resolution.ok) return resolution;
   const { designation, ei, selfWeight, depth } = resolution.section;
   const resolved = { designation, ei, selfWeight, depth };
   return {
     ok: true,
-    section: { table, values, material: material.id, materialName: material.name, resolved },
+    section: { table, origin, values, material: material.id, materialName: material.name, resolved },
   };
 }

@@ -7,10 +7,15 @@ import type { Template } from '@/engine/template';
 import { parseExpression } from '@/engine/template/parse';
 import { evaluateMember } from '@/features/member/evaluate';
 import { readSectionTable } from '@/features/section/import';
-import { sectionTableMetaSchema, toSectionItem, toSectionValues } from '@/features/section/section';
+import {
+  sectionTableMetaSchema,
+  toRowOrigin,
+  toSectionItem,
+  toSectionValues,
+} from '@/features/section/section';
 import { shippedTemplate } from '../../../tests/support/templates';
 import { type Asked, wrongIn } from '../../../tests/support/traced';
-import { memberSubject } from './subject';
+import { toSubject } from './subject';
 
 interface DemoMember {
   readonly mark: string;
@@ -31,8 +36,15 @@ function sectionOf({ designation, table, material: id }: NonNullable<DemoMember[
   const row = reading.ok && reading.rows.find((one) => one.key === designationKey(designation));
   const material = materialFor(id);
   if (!row || !material) throw new Error(`${designation} of ${id}`);
-  const values = toSectionValues(toSectionItem(row, table, 1));
-  return { values, material, table, tableName: meta.name, edition: 1, computed: row.computed };
+  const item = toSectionItem(row, table, 1);
+  return {
+    values: toSectionValues(item),
+    material,
+    chosen: {
+      ...{ values: toSectionValues(item), table, material: id },
+      origin: { ...toRowOrigin(item), tableName: meta.name },
+    },
+  };
 }
 
 interface Given {
@@ -50,7 +62,16 @@ function pageOf({ section = null, ownWeight = true, ...given }: Given) {
   const reading = evaluateMember(inputs);
   if (!reading.ok) throw new Error(JSON.stringify(reading.faults));
   const { evaluation } = reading;
-  const subject = memberSubject({ inputs, evaluation, templateRevision: 1, section, criteriaRevision: 1 });
+  const chosen = section?.chosen ?? null;
+  const about = {
+    kind: 'member',
+    inputs,
+    evaluation,
+    revision: 1,
+    section: chosen,
+    criteriaRevision: 1,
+  } as const;
+  const subject = toSubject(about);
   return { evaluation, subject };
 }
 

@@ -1,24 +1,27 @@
 /** What the engine is asked about, out of what a page has evaluated. Pure. */
+import type { Redundant } from '@/engine/model';
 import type { UnitSystemName } from '@/engine/quantity';
-import type { Material } from '@/engine/section';
+import { materialFor } from '@/engine/section';
 import { readParameters, type Template, type Values } from '@/engine/template';
 import type { Subject, SubjectSection } from '@/engine/why';
 import type { MemberEvaluation, MemberInputs } from '@/features/member/evaluate';
 import type { SectionValues } from '@/features/section/resolve';
+import type { RowOrigin } from '@/features/section/section';
 import type { TemplateEvaluation } from '@/features/template/evaluate';
 
-/** A section as it was chosen; what it was computed from is known where its row is. */
+/** A section as it was chosen. */
 export interface ChosenSection {
   readonly values: SectionValues;
+  /** The slug of its table. */
   readonly table: string;
-  readonly tableName: string;
-  readonly edition: number | null;
-  readonly material: Material;
-  readonly computed: readonly string[];
+  /** The material's id. */
+  readonly material: string;
+  readonly origin?: RowOrigin | undefined;
 }
 
-interface TemplateAsked {
-  readonly evaluation: TemplateEvaluation;
+export interface TemplateAbout {
+  readonly kind: 'template';
+  readonly evaluation: Pick<TemplateEvaluation, 'template' | 'instance' | 'beam'>;
   readonly revision: number;
   /** As typed, by symbol. */
   readonly parameters: Readonly<Record<string, unknown>>;
@@ -26,56 +29,71 @@ interface TemplateAsked {
   readonly section: ChosenSection | null;
   /** Null where EI is the section's, or the template's own. */
   readonly ei: string | null;
+  /** What the page releases. */
+  readonly redundants: readonly Redundant[];
 }
 
-/** A template at the values of its page. */
-export const templateSubject = (asked: TemplateAsked): Subject => ({
-  template: asked.evaluation.template,
-  revision: asked.revision,
-  instance: asked.evaluation.instance,
-  beam: asked.evaluation.beam,
-  typed: asked.parameters,
-  values: valuesOf(asked.evaluation.template, asked.parameters),
-  system: asked.system,
-  section: asked.section && sectionOf(asked.section),
-  typedEi: asked.ei,
-  patterned: [],
-  criteria: null,
-});
-
-interface MemberAsked {
+export interface MemberAbout {
+  readonly kind: 'member';
   readonly inputs: MemberInputs;
   readonly evaluation: MemberEvaluation;
-  readonly templateRevision: number;
+  readonly revision: number;
   readonly section: ChosenSection | null;
   readonly criteriaRevision: number | null;
 }
 
-/** A member as it stands in its fields. */
-export const memberSubject = ({
-  inputs,
+/** What a page can be asked about. */
+export type About = TemplateAbout | MemberAbout;
+
+export const toSubject = (about: About): Subject =>
+  about.kind === 'template' ? ofTemplate(about) : ofMember(about);
+
+function ofTemplate({
   evaluation,
-  templateRevision,
+  revision,
+  parameters,
+  system,
   section,
-  criteriaRevision,
-}: MemberAsked): Subject => ({
-  template: inputs.template,
-  revision: templateRevision,
-  instance: evaluation.instance,
-  beam: evaluation.beam,
-  typed: inputs.parameters,
-  values: valuesOf(inputs.template, inputs.parameters),
-  system: inputs.system,
-  section: section && sectionOf(section),
-  typedEi: null,
-  patterned: evaluation.patterning.groups,
-  criteria: inputs.criteria && {
-    document: inputs.criteria,
-    revision: criteriaRevision,
-    strength: evaluation.strength.map(({ combination }) => combination),
-    limits: evaluation.service.map(({ limit }) => limit),
-  },
-});
+  ei,
+  redundants,
+}: TemplateAbout): Subject {
+  const { template, instance, beam } = evaluation;
+  return {
+    template,
+    revision,
+    instance: { ...instance, beam: { ...instance.beam, redundants: [...redundants] } },
+    beam,
+    typed: parameters,
+    values: valuesOf(template, parameters),
+    system,
+    section: section && sectionOf(section),
+    typedEi: ei,
+    patterned: [],
+    criteria: null,
+  };
+}
+
+function ofMember({ inputs, evaluation, revision, section, criteriaRevision }: MemberAbout): Subject {
+  const { template, parameters, system, criteria } = inputs;
+  return {
+    template,
+    revision,
+    instance: evaluation.instance,
+    beam: evaluation.beam,
+    typed: parameters,
+    values: valuesOf(template, parameters),
+    system,
+    section: section && sectionOf(section),
+    typedEi: null,
+    patterned: evaluation.patterning.groups,
+    criteria: criteria && {
+      document: criteria,
+      revision: criteriaRevision,
+      strength: evaluation.strength.map(({ combination }) => combination),
+      limits: evaluation.service.map(({ limit }) => limit),
+    },
+  };
+}
 
 /** Values that were evaluated are read again; they are known to be good. */
 function valuesOf(template: Template, parameters: Readonly<Record<string, unknown>>): Values {
@@ -83,22 +101,17 @@ function valuesOf(template: Template, parameters: Readonly<Record<string, unknow
   return reading.ok ? reading.values : {};
 }
 
-const sectionOf = ({
-  values,
-  table,
-  tableName,
-  edition,
-  material,
-  computed,
-}: ChosenSection): SubjectSection => ({
-  designation: values.designation,
-  table,
-  tableName,
-  edition,
-  dimensions: values.dimensions,
-  massKgM: values.massKgM,
-  iMajorCm4: values.iMajorCm4,
-  wElCm3: values.wElCm3,
-  computed,
-  material,
-});
+function sectionOf({ values, table, material: id, origin }: ChosenSection): SubjectSection | null {
+  const material = materialFor(id);
+  return (
+    (material && {
+      ...values,
+      table,
+      tableName: origin?.tableName ?? table,
+      edition: origin?.edition ?? null,
+      computed: origin?.computed ?? [],
+      material,
+    }) ??
+    null
+  );
+}

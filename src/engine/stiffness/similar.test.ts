@@ -1,9 +1,9 @@
 import { describe, expect, test } from 'vitest';
 import { exactBeams, kindsOf } from '../../../tests/support/exact-beams';
 import { stableBeam } from '../../../tests/support/stable-beam';
+import { solveBeam, tipParts } from '../beam/index';
 import type { Beam, Load, Restraint } from '../model/index';
-import { PlainStiffness, solveStiffness } from '../stiffness/index';
-import { forceMethod, solveBeam, stationsAt, tipParts } from './index';
+import { PlainStiffness, solveStiffness } from './index';
 
 /**
  * The laws of similarity (dimensional analysis) and of proportion: lengths k times and forces q times as large have
@@ -84,35 +84,5 @@ describe.each(SIZES)('with $name', (sizes) => {
     const beam = stableBeam(document);
     const scaled = positions.map((x) => x * sizes.k);
     expect(allOf(similar(beam, sizes), scaled, sizes)).toEqual(allOf(beam, positions, ONE));
-  });
-});
-
-describe('nothing is −0', () => {
-  /** Where the value of any number in it is −0. */
-  function negativeZeros(value: unknown, path = ''): string[] {
-    if (typeof value === 'number') return Object.is(value, -0) ? [path] : [];
-    if (typeof value !== 'object' || value === null) return [];
-    const entries: [string, unknown][] = ArrayBuffer.isView(value)
-      ? Array.from(value as Float64Array, (x, i) => [String(i), x])
-      : Object.entries(value);
-    return entries.flatMap(([key, one]) => negativeZeros(one, `${path}.${key}`));
-  }
-
-  test.each(beams)('in $name', ({ document, positions }) => {
-    const beam = stableBeam(document);
-    const solution = solveBeam(beam);
-    const { released: _, ...parts } = forceMethod(beam);
-    const found = {
-      solution,
-      parts,
-      tips: tipParts(beam, solution),
-      stations: stationsAt(solution, positions),
-    };
-    expect(negativeZeros(found)).toEqual([]);
-  });
-
-  test('even where a station is asked for at −0', () => {
-    const beam = stableBeam(beams[0]!.document);
-    expect(stationsAt(solveBeam(beam), [-0])[0]!.x).toBe(0);
   });
 });

@@ -21,7 +21,7 @@ export interface Asked {
   readonly 'run-impact': RunTask;
 }
 
-export type ClockTask = keyof typeof SCHEDULE;
+type ClockTask = keyof typeof SCHEDULE;
 export type AskedTask = keyof Asked;
 const CLOCK_TASKS = Object.keys(SCHEDULE) as readonly ClockTask[];
 const ASKED_TASKS = ['run-proof', 'run-impact'] as const satisfies readonly AskedTask[];

@@ -1,7 +1,7 @@
 /**
  * Stryker on the arithmetic of the solvers and the charts: npm run mutation. What it cannot see, the arithmetic that is
  * spelled as methods and the numbers themselves, scripts/mutate changes (npm run perturb). See README.md.
- * @type {import('@stryker-mutator/api/core').PartialStrykerOptions}
+ * https://stryker-mutator.io/docs names the options
  */
 export default {
   testRunner: 'vitest',

@@ -1,3 +1,3 @@
 export { derive } from './derive';
 export * from './lettered';
-export { type DerivationStep, type DisplayUnit, joinedNumbers, SI_UNITS } from './types';
+export { type DerivationStep, joinedNumbers, SI_UNITS } from './types';

@@ -49,7 +49,7 @@ function shifted(coefficients: readonly number[], by: number): number[] {
   return found;
 }
 
-export const isZero = (coefficients: readonly number[]): boolean => coefficients.every((c) => c === 0);
+const isZero = (coefficients: readonly number[]): boolean => coefficients.every((c) => c === 0);
 
 /** The integral in the letters' units; null where it is nothing. */
 export function productTerm(letters: Letters, product: Product): NumberTerm | null {

@@ -3,7 +3,7 @@ export { rightSide } from './coefficients';
 export { type Movements, movementsOf } from './movements';
 export { type NamedBeam, nameBeam } from './named-beam';
 export { loadsOn, movementsOn, type Piece, partOn, unitOn, yieldingOn } from './pieces';
-export { equilibrium, momentAt, type Part } from './statics';
+export { equilibrium, type Part } from './statics';
 export { fixingSense, fixingTex, flexibilityTex, gapTex, reactionTex, type Unknown } from './unknown';
 export { type Worked, work } from './values';
 export { causeTex, causeWords, nameForce, nameMovement } from './words';

@@ -21,15 +21,14 @@ import { asProofCase, type WrittenCase } from './proof-worst';
 
 export type { BoxPoint } from './proof-box';
 export type { Limit } from './proof-limits';
-export type { LawTally, SamenessTally, SweepTally, Worst } from './proof-tally';
-export type { WrittenCase } from './proof-worst';
+export type { LawTally, SamenessTally, SweepTally } from './proof-tally';
 
 /** What is proven: a checked template, and the issued revision that it would take the place of. */
 export type ProofSubject = { readonly template: Template; readonly issued: Template | null };
 
 /** Points of the sweep, the fewest that prove anything, and hypercubes until block rules have let in that many. */
 const POINTS = 240;
-export const LEAST_POINTS = 200;
+const LEAST_POINTS = 200;
 const BATCHES = 40;
 const SEED = 1;
 

@@ -43,7 +43,7 @@ export function solvePoint(template: Template, point: BoxPoint): PointReading {
 }
 
 /** The same for values in SI, within their ranges or not; EI is the template's own unless it is given. */
-export function solveValues(template: Template, values: Values, ei = defaultEi(template)): PointReading {
+function solveValues(template: Template, values: Values, ei = defaultEi(template)): PointReading {
   const scope = scopeOf(template, values, ei);
   const blocked = (known: Known): PointReading | undefined => {
     const rule = judgeRules(template, scope, known).find(

@@ -6,7 +6,7 @@ import type { Sameness } from './proof-same';
 import { compareForms, type PointReading, type SolvedPoint } from './proof-solve';
 
 /** The largest share found, and where. */
-export type Worst = { share: number; at: BoxPoint };
+type Worst = { share: number; at: BoxPoint };
 
 export type LawTally = { points: number; failed: number; largest: number };
 

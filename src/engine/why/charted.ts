@@ -16,7 +16,7 @@ import type { State } from './state';
 import type { Source, Trace } from './types';
 
 /** The published cases behind some terms, each once. */
-export function sourcesOf(terms: readonly ChartTerm[]): Source[] {
+function sourcesOf(terms: readonly ChartTerm[]): Source[] {
   const used = new Map(terms.map(({ chart }) => [chart.id, chart]));
   return [...used.values()].map(({ title, source: { work, edition, table, entry, fromMemory } }) => {
     const place = [

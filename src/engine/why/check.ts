@@ -5,7 +5,7 @@ import { placeOf } from './extreme';
 import type { Field } from './field';
 import type { Fields } from './fields';
 import type { Spot } from './lettered-beam';
-import { formula, type Head, leaf, cited, sourceOf } from './node';
+import { cited, formula, type Head, leaf, sourceOf } from './node';
 import type { SectionTraces } from './section';
 import type { Acting, Measure, Part, SubjectCriteria, Trace } from './types';
 

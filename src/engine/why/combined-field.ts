@@ -1,6 +1,6 @@
 import type { Field, Local } from './field';
 import type { LetteredBeam, Spot } from './lettered-beam';
-import { formula, type Head } from './node';
+import { formula, type Head, renamed } from './node';
 import { positive, total } from './tree';
 import type { Part, Quantity, Side, Trace } from './types';
 
@@ -8,6 +8,8 @@ import type { Part, Quantity, Side, Trace } from './types';
 export type Share = {
   /** As an index of its values: "G", "Q,AB". */
   readonly index: string;
+  /** "G, permanent", "Q, imposed, span A–B". */
+  readonly words: string;
   readonly factor: Trace;
   readonly field: Field;
 };
@@ -55,9 +57,11 @@ export class CombinedField implements Field {
 
   /** Any quantity that adds up: its value in each case, or null where it is nothing. */
   sum(head: Omit<Head, 'value'>, cases: readonly (Trace | null)[]): Trace {
-    const acting = this.shares.flatMap(({ index, factor }, k) => {
-      const trace = cases[k];
-      return trace ? [{ index, factor, trace }] : [];
+    const acting = this.shares.flatMap(({ index, words, factor }, k) => {
+      const found = cases[k];
+      if (!found) return [];
+      const trace = renamed(found, { label: `${found.label}, ${words}` });
+      return [{ index, factor, trace }];
     });
     const value = acting.reduce((sum, { factor, trace }) => sum + factor.value * trace.value, 0);
     const name = (index: string) => `{${head.symbol || 'w'}}_{\\mathrm{${index}}}`;

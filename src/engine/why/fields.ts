@@ -12,7 +12,7 @@ import { CombinedField, type Share } from './combined-field';
 import type { Field } from './field';
 import { Givens } from './givens';
 import { type CaseLoad, LetteredBeam } from './lettered-beam';
-import { constant, leaf, cited, sourceOf } from './node';
+import { cited, constant, leaf, sourceOf } from './node';
 import { Redundants } from './redundants';
 import type { Acting, Source, Subject, Trace } from './types';
 
@@ -72,6 +72,7 @@ export class Fields {
       return [
         {
           index: this.indexOf(group, span),
+          words: this.wordsOf(group, span),
           factor:
             group === null
               ? unfactored()
@@ -112,10 +113,9 @@ export class Fields {
     readonly combination: Combination;
     readonly source: Source;
   }): Trace {
-    const known = LOAD_GROUPS.find((one) => one === group);
     return leaf(
       {
-        label: `Factor of ${known ? `${known}, ${LOAD_GROUP_NAMES[known]}` : group}, in ${combination.name}`,
+        label: `Factor of ${groupWords(group)}, in ${combination.name}`,
         symbol: `\\gamma_{\\mathrm{${group}}}`,
         value,
         measure: 'ratio',
@@ -148,6 +148,12 @@ export class Fields {
       : group;
   }
 
+  private wordsOf(group: string | null, span: number | null): string {
+    if (group === null) return 'the supports’ own movements';
+    const region = span === null ? undefined : regionsOf(this.subject.beam)[span];
+    return region ? `${groupWords(group)}, ${region.name}` : groupWords(group);
+  }
+
   private once<T extends Field>(key: string, make: () => T): Field {
     const found = this.made.get(key) ?? make();
     this.made.set(key, found);
@@ -165,3 +171,9 @@ const unfactored = (): Trace =>
     },
     'Putlog',
   );
+
+/** "G, permanent". */
+function groupWords(group: string): string {
+  const known = LOAD_GROUPS.find((one) => one === group);
+  return known ? `${known}, ${LOAD_GROUP_NAMES[known]}` : group;
+}

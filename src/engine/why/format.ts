@@ -56,7 +56,11 @@ export function formatValue(
 ): string {
   if (!isUnnamed(measure)) return formatFor(value, measure satisfies Purpose, system);
   const { unit, factor } = unitOf(measure, system);
-  const text = formatNumber(value / factor, { significant: FIGURES });
+  const number = value / factor;
+  const text =
+    measure === 'ratio'
+      ? formatNumber(Number(number.toPrecision(FIGURES)))
+      : formatNumber(number, { significant: FIGURES });
   return unit === '' ? text : `${text}${NO_BREAK_SPACE}${unit}`;
 }
 

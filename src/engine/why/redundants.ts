@@ -157,7 +157,7 @@ export class Redundants {
 
 const COMPATIBLE = 'Its movement and the released beam’s must add up to that of its support.';
 
-export const movementMeasure = ({ kind }: Unknown): Measure => (kind === 'reaction' ? 'deflection' : 'slope');
+const movementMeasure = ({ kind }: Unknown): Measure => (kind === 'reaction' ? 'deflection' : 'slope');
 
 const complianceMeasure = (at: Unknown, unit: Unknown): Measure =>
   `${at.kind === 'reaction' ? 'deflection' : 'rotation'}_per_${unit.kind === 'reaction' ? 'force' : 'moment'}`;

@@ -1,6 +1,6 @@
 import { STANDARD_GRAVITY } from '../quantity/index';
 import { elasticStrength, governingThickness, type Material, sectionProperties } from '../section/index';
-import { constant, formula, leaf, node, cited } from './node';
+import { cited, constant, formula, leaf, node } from './node';
 import { DIMENSIONS_OF } from './section-property';
 import type { Measure, Part, SectionProperty, Source, SubjectSection, Trace } from './types';
 

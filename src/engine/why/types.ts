@@ -98,7 +98,7 @@ export type SectionProperty = {
   readonly property: 'area' | 'iMajor' | 'firstMoment' | 'webThickness';
 };
 
-export type SectionPlace = {
+type SectionPlace = {
   readonly designation: string;
   /** The table's slug and its name. */
   readonly table: string;

@@ -18,7 +18,7 @@ interface Figure {
 }
 
 /** A figure that is another one by now. Null: there is none with that revision. */
-export interface FigureChange {
+interface FigureChange {
   readonly name: string;
   readonly purpose: Purpose;
   readonly from: number | null;
@@ -28,7 +28,7 @@ export interface FigureChange {
 }
 
 /** A check whose utilisation is another one by now. */
-export interface CheckChange {
+interface CheckChange {
   readonly title: string;
   readonly place: string;
   readonly from: number | null;

@@ -5,8 +5,8 @@ import { DOCUMENT_KINDS, REVISION_STATES } from '@/features/review/review';
 import { purposeOfSelector } from '@/features/template/lines';
 
 /** What a difference is about. */
-export const PARTS = ['parameters', 'formulas', 'limits', 'beam', 'proof', 'sources', 'text'] as const;
-export type Part = (typeof PARTS)[number];
+const PARTS = ['parameters', 'formulas', 'limits', 'beam', 'proof', 'sources', 'text'] as const;
+type Part = (typeof PARTS)[number];
 
 const revision = z.strictObject({ number: z.int(), state: z.enum(REVISION_STATES) });
 const text = z.string().nullable();

@@ -83,14 +83,12 @@ export const stateName = (state: RevisionState): string =>
 
 /** Of what a worker does for a revision: its proof, its impact. */
 export const RUN_STATES = ['queued', 'running', 'finished', 'failed'] as const;
-export type RunState = (typeof RUN_STATES)[number];
 
 /** What a member's owner decides when a revision that it pins is recalled. */
 export const RECALL_DECISIONS = ['unaffected', 'upgraded', 'redesigned', 'accepted', 'not_used'] as const;
 export type RecallDecision = (typeof RECALL_DECISIONS)[number];
 
 export const REQUEST_KINDS = ['request', 'defect'] as const;
-export type RequestKind = (typeof REQUEST_KINDS)[number];
 
 export const REQUEST_STATES = ['open', 'accepted', 'declined', 'done'] as const;
 export type RequestState = (typeof REQUEST_STATES)[number];

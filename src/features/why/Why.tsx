@@ -8,7 +8,7 @@ interface WhyProps {
 }
 
 const LOOK =
-  'why -my-3 inline-flex min-h-24 min-w-24 cursor-help items-center justify-end text-inherit decoration-ochre decoration-dotted underline-offset-3 hover:underline focus-visible:underline';
+  'why -my-3 inline-flex min-h-24 min-w-24 cursor-help items-center text-inherit [.figure_&]:justify-end decoration-ochre decoration-dotted underline-offset-3 hover:underline focus-visible:underline';
 
 /** A number that says where it comes from, where the page answers; else the number alone. */
 export function Why({ question, children }: WhyProps) {

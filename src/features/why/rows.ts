@@ -20,13 +20,13 @@ export interface Row {
 }
 
 /** Parts that are one number are shown once. */
-export const partsOf = ({ parts }: Trace): Part[] =>
+const partsOf = ({ parts }: Trace): Part[] =>
   parts.filter(
     (part, i) => parts.findIndex((other) => other.name === part.name && other.trace === part.trace) === i,
   );
 
 const under = (path: Path, place: number): Path => (path === ROOT ? String(place) : `${path}/${place}`);
-export const parentOf = (path: Path): Path | null =>
+const parentOf = (path: Path): Path | null =>
   path === ROOT ? null : path.includes('/') ? path.slice(0, path.lastIndexOf('/')) : ROOT;
 
 /** The root, and the parts of all that is open. */

@@ -10,7 +10,7 @@ import type { RowOrigin } from '@/features/section/section';
 import type { TemplateEvaluation } from '@/features/template/evaluate';
 
 /** A section as it was chosen. */
-export interface ChosenSection {
+interface ChosenSection {
   readonly values: SectionValues;
   /** The slug of its table. */
   readonly table: string;
@@ -19,7 +19,7 @@ export interface ChosenSection {
   readonly origin?: RowOrigin | undefined;
 }
 
-export interface TemplateAbout {
+interface TemplateAbout {
   readonly kind: 'template';
   readonly evaluation: Pick<TemplateEvaluation, 'template' | 'instance' | 'beam'>;
   readonly revision: number;
@@ -33,7 +33,7 @@ export interface TemplateAbout {
   readonly redundants: readonly Redundant[];
 }
 
-export interface MemberAbout {
+interface MemberAbout {
   readonly kind: 'member';
   readonly inputs: MemberInputs;
   readonly evaluation: MemberEvaluation;

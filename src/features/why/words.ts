@@ -64,8 +64,7 @@ export function leafWords({ how }: Trace): string {
   }
 }
 
-export const sourceWords = ({ text, fromMemory }: Source): string =>
-  `${text}${fromMemory ? ' (from memory)' : ''}`;
+const sourceWords = ({ text, fromMemory }: Source): string => `${text}${fromMemory ? ' (from memory)' : ''}`;
 
 /** Everything that is printed of a number, for its details. */
 export function sourcesOf({ how }: Trace): string[] {

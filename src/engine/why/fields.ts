@@ -149,7 +149,6 @@ export class Fields {
   }
 
   private wordsOf(group: string | null, span: number | null): string {
-    if (group === null) return 'the supports’ own movements';
     const region = span === null ? undefined : regionsOf(this.subject.beam)[span];
     return region ? `${groupWords(group)}, ${region.name}` : groupWords(group);
   }
@@ -173,7 +172,8 @@ const unfactored = (): Trace =>
   );
 
 /** "G, permanent". */
-function groupWords(group: string): string {
+export function groupWords(group: string | null): string {
+  if (group === null) return 'the supports’ own movements';
   const known = LOAD_GROUPS.find((one) => one === group);
   return known ? `${known}, ${LOAD_GROUP_NAMES[known]}` : group;
 }

@@ -367,6 +367,42 @@ describe('places, supports and stiffness', () => {
   });
 });
 
+describe('what a drawing and a derivation ask', () => {
+  const two = subjectOf(shippedTemplate('three-equal-spans-patterns'));
+  const step = (id: string, subject = benchmark) => why({ kind: 'step', id }, subject);
+
+  test('a step of the derivation is the number that it finds', () => {
+    expect(step('compatibility')).toMatchObject({ symbol: 'R_{B}' });
+    expect(step('closed-form').value).toBe(step('compatibility').value);
+    expect(step('gap-B')).toMatchObject({ symbol: '\\delta_{B0}' });
+    expect(step('gap-B-w')).toMatchObject({ symbol: '\\delta_{B0}' });
+    expect(step('flexibility-B-B')).toMatchObject({ symbol: 'f_{BB}' });
+    expect(step('equilibrium-RA')).toMatchObject({ label: 'Reaction at A' });
+    expect(step('redundant-C', two)).toMatchObject({ symbol: 'M_{C}' });
+    expect(step('reciprocal-C-B', two)).toMatchObject({ symbol: 'f_{CB}' });
+    expect(() => step('check', two)).toThrow(RangeError);
+  });
+
+  test('a peak that a drawing found is brought to where the derivative is zero', () => {
+    const x = (5 * 6) / 8 - (3 * 1.8 * 1.8) / (4 * 6);
+    const local = (at: number): Key => ({
+      ...{ kind: 'extreme', quantity: 'moment', sense: 'local', x: at, acting: ALL },
+    });
+    const peak = why(local(x + 1e-7));
+    expect(peak.label).toBe('Peak of the moment, at 3.345\u00a0m');
+    expect(part(peak, 'x').value).toBeCloseTo(x, 12);
+    expect(part(why(local(2)), 'x').how).toEqual({ kind: 'station' });
+    const atSupport = why({ ...local(6), quantity: 'shear' } as Key);
+    const [L, a, w] = [6, 1.8, 5517];
+    expect(atSupport.value).toBeCloseTo((5 * w * L) / 8 - (3 * w * a * a) / (4 * L) - w * L, 6);
+  });
+
+  test('of a group alone, it says so', () => {
+    const acting = { kind: 'group', group: 'S' } as const;
+    expect(why({ ...reaction(1), acting } as Key).label).toBe('Reaction at B, a redundant, S, snow alone');
+  });
+});
+
 describe('loads that act at once', () => {
   const source = { text: 'EN 1990, 6.10', fromMemory: true };
   const acting = (factors: Readonly<Record<string, number>>, pattern: readonly number[] = []) =>

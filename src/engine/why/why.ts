@@ -1,8 +1,8 @@
 import { CheckTraces } from './check';
 import { extremeOf, placeOf } from './extreme';
-import { Fields } from './fields';
+import { Fields, groupWords } from './fields';
 import { type Spot, station } from './lettered-beam';
-import { constant, formula } from './node';
+import { constant, formula, renamed } from './node';
 import type { SectionTraces } from './section';
 import type { Key, Source, Subject, Trace } from './types';
 
@@ -21,6 +21,14 @@ export class Traces {
   }
 
   why(key: Key): Trace {
+    const trace = this.answer(key);
+    const isOfGroup = 'acting' in key && key.acting.kind === 'group';
+    return isOfGroup
+      ? renamed(trace, { label: `${trace.label}, ${groupWords(key.acting.group)} alone` })
+      : trace;
+  }
+
+  private answer(key: Key): Trace {
     const { fields } = this;
     switch (key.kind) {
       case 'reaction':

@@ -1,6 +1,7 @@
 import { RichHtml } from '@/components/drawing/marks/RichHtml';
 import type { DerivationStep } from '@/engine/derivation';
 import { unitText } from '@/engine/quantity';
+import { WhyGrid } from '@/features/why/WhyGrid';
 import { WhyStep } from '@/features/why/WhyStep';
 import { WideFormula } from './WideFormula';
 import { isLong, type WorkedSteps } from './worked';
@@ -19,11 +20,13 @@ const FORMULA =
 /** The worked steps, numbered; those that find the redundants are washed. */
 export function Derivation({ steps, formulaOf }: Worked) {
   return (
-    <ol className="mt-6 border-t-2 border-ink">
-      {steps.map((step, index) => (
-        <Step key={step.id} steps={steps} index={index} formulaOf={formulaOf} />
-      ))}
-    </ol>
+    <WhyGrid>
+      <ol className="mt-6 border-t-2 border-ink">
+        {steps.map((step, index) => (
+          <Step key={step.id} steps={steps} index={index} formulaOf={formulaOf} />
+        ))}
+      </ol>
+    </WhyGrid>
   );
 }
 

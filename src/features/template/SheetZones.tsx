@@ -3,6 +3,7 @@ import { RichHtml } from '@/components/drawing/marks/RichHtml';
 import { ZoneHeading } from '@/components/ui/ZoneHeading';
 import type { Template } from '@/engine/template';
 import { Why } from '@/features/why/Why';
+import { WhyGrid } from '@/features/why/WhyGrid';
 import { Formula } from './Formula';
 import { type ProofLine, type ResultLine, type RuleLine, sourceText } from './lines';
 
@@ -115,24 +116,26 @@ interface ClosedFormsProps {
 /** The published closed forms at these values, beside which the solved figures stand; a source is named once for those it gives. */
 export function ClosedForms({ results, formulas }: ClosedFormsProps) {
   return (
-    <ul className="border-t-2 border-ink">
-      {results.map(({ id, name, tex, formula, text, source }, index) => (
-        <li key={id} className="border-b border-rule py-6">
-          <div className="flex items-baseline gap-10">
-            <span className="min-w-0 flex-1 text-schedule text-ink-2">{name}</span>
-            <b className="font-semibold whitespace-nowrap">
-              <Why question={() => ({ kind: 'closed form', id })}>{text}</Why>
-            </b>
-          </div>
-          <div className="overflow-x-auto overflow-y-hidden py-3 [&_.katex]:text-[1em]!">
-            <Formula html={formulas[`${tex} = ${formula}`] ?? ''} />
-          </div>
-          {source !== results[index + 1]?.source && (
-            <p className="mt-2 text-note text-ink-2 italic">{source}</p>
-          )}
-        </li>
-      ))}
-    </ul>
+    <WhyGrid>
+      <ul className="border-t-2 border-ink">
+        {results.map(({ id, name, tex, formula, text, source }, index) => (
+          <li key={id} className="border-b border-rule py-6">
+            <div className="flex items-baseline gap-10">
+              <span className="min-w-0 flex-1 text-schedule text-ink-2">{name}</span>
+              <b className="font-semibold whitespace-nowrap">
+                <Why question={() => ({ kind: 'closed form', id })}>{text}</Why>
+              </b>
+            </div>
+            <div className="overflow-x-auto overflow-y-hidden py-3 [&_.katex]:text-[1em]!">
+              <Formula html={formulas[`${tex} = ${formula}`] ?? ''} />
+            </div>
+            {source !== results[index + 1]?.source && (
+              <p className="mt-2 text-note text-ink-2 italic">{source}</p>
+            )}
+          </li>
+        ))}
+      </ul>
+    </WhyGrid>
   );
 }
 

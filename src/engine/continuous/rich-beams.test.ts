@@ -156,3 +156,54 @@ describe.each(Object.entries(BEAMS))('as 32 digits solve it: %s', (_, supports) 
     for (const load of LOADS) expectAsWide(beamOf(supports, [load], STEPPED));
   });
 });
+
+describe('extremes as of their diagrams', () => {
+  const span = (supports: SupportDocument[], load: Load, ga: number | null = null): Beam => {
+    const reading = readBeam({ length: 6, ei: 2e7, ga, supports, loads: [load], horizontal: 'ignore' });
+    if (!reading.ok) throw new Error(reading.faults.map(({ message }) => message).join(' '));
+    return reading.value;
+  };
+  const line = (w0: number, w1: number): Load => ({ kind: 'line', from: 0, to: 6, w0, w1 });
+
+  test('where the load changes its sense, so that θ turns three times', () => {
+    expectAsWide(span([fixed(0), fixed(6)], line(5000, -5000)));
+    expectAsWide(span([fixed(0), fixed(6)], line(5000, -4000)));
+    expectAsWide(span([fixed(0), fixed(6)], line(-3000, 5000), 3e7));
+    expectAsWide(span([fixed(0), roller(6)], line(4000, -5000)));
+  });
+
+  test('where it changes its sense within the first metre, and V has its most there', () => {
+    const beam = span([roller(0), roller(6)], line(-1000, 11000));
+    expectAsWide(beam);
+    const solver = continuousBeam(beam)!;
+    solver.solve();
+    expect(solver.extremes().shear.maxAt).toBeCloseTo(0.5, 12);
+  });
+
+  test('where shear turns θ as much as bending does', () => {
+    for (const factor of [13, 16, 20, 23]) {
+      expectAsWide(span([fixed(0), fixed(6)], line(5000, 5000), (factor * 2e7) / 36));
+      expectAsWide(span([fixed(0), fixed(6)], line(-5000, -5000), (factor * 2e7) / 36));
+    }
+  });
+
+  test('where θ does not turn, after a beam where it did', () => {
+    const solver = continuousBeam(span([fixed(0), roller(6)], line(5000, 5000)))!;
+    solver.solve();
+    solver.extremes();
+    const short = readBeam({
+      length: 1,
+      ei: 2e7,
+      supports: [fixed(0)],
+      loads: [{ kind: 'point', at: 1, p: 100 }],
+      horizontal: 'ignore',
+    });
+    if (!short.ok) throw new Error('this is a cantilever');
+    solver.take(short.value);
+    solver.solve();
+    const { slope, deflection } = solver.extremes();
+    expect([slope.max, slope.minAt, deflection.max, deflection.minAt]).toEqual([0, 1, 0, 1]);
+    expect(slope.min).toBeCloseTo(-100 / 2 / 2e7, 18);
+    expect(deflection.min).toBeCloseTo(-100 / 3 / 2e7, 18);
+  });
+});

@@ -22,7 +22,7 @@ export interface Asked {
 }
 
 type ClockTask = keyof typeof SCHEDULE;
-export type AskedTask = keyof Asked;
+type AskedTask = keyof Asked;
 const CLOCK_TASKS = Object.keys(SCHEDULE) as readonly ClockTask[];
 const ASKED_TASKS = ['run-proof', 'run-impact'] as const satisfies readonly AskedTask[];
 

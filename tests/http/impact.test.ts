@@ -210,6 +210,21 @@ test('an edition of a section table: the section’s row in it, or none', async 
   expect(b1.figures[0].share).toBeCloseTo(-0.5, 9);
 }, 60_000);
 
+test('a member is evaluated as whoever changed it last may, and said to be unread where they may not', async () => {
+  const slug = 'simple-span-point';
+  const placed = { ...member('N1'), template: slug, parameters: { L: '6 m', a: '2 m', P: '20 kN' } };
+  await job('I-6', [placed], 'colleague', 'named');
+  await owner.sql`update member set changed_by_id = ${people.engineer.personId} where mark = 'N1' and practice_id = ${people.engineer.practiceId}`;
+  await draftTemplate(people.librarian, slug, heavier(slug));
+  const url = at('template', slug, 2);
+  await work((await post(url)).json.id);
+  expect((await get(url)).json).toMatchObject({
+    state: 'finished',
+    counts: { unread: 1, changed: 0 },
+    items: [{ mark: 'N1', outcome: 'unread', figures: [], checks: [] }],
+  });
+});
+
 describe('a member’s owner', () => {
   test('sees before and after, and upgrades with one press', async () => {
     const slug = 'cantilever-uniform';

@@ -78,7 +78,7 @@ function solveProven(instance: Instance, beam: Beam): PointReading {
 }
 
 /** A closed form beside the solver: their difference as a share of the largest value of its kind. */
-export type FormShare = { readonly id: string; readonly share: number };
+type FormShare = { readonly id: string; readonly share: number };
 
 /** Every closed form that holds at the point. */
 export const compareForms = (template: Template, { instance, solution }: SolvedPoint): FormShare[] =>

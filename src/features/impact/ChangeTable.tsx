@@ -69,9 +69,11 @@ export function ChangeTable({ changes, system, to }: ChangeTableProps) {
       <tbody>
         {rowsOf(changes, system).map(({ name, turn, now, after, change }) => (
           <tr key={name} data-chosen={turn !== null || undefined}>
-            <th scope="row" className="font-normal!">
-              {name}
-              {turn !== null && <b className="block font-semibold text-error">{turn}</b>}
+            <th scope="row" className="font-normal! max-md:text-left!">
+              <span>
+                {name}
+                {turn !== null && <b className="block font-semibold text-error">{turn}</b>}
+              </span>
             </th>
             <td data-label="Now" className="figure">
               {now}

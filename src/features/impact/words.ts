@@ -9,10 +9,16 @@ import {
 
 /** Enough to see a change of a thousandth. */
 const FIGURES = 4;
+/** What two ways of calculating one figure have in common: they are not to be rounded apart. */
+const COMMON = 12;
 
 /** A figure of which a small change is to be seen: "33.28 kN". */
 export const figureText = (value: number | null, purpose: Purpose, system: UnitSystemName): string =>
-  value === null ? '–' : formatQuantity(value, UNIT_SYSTEMS[system][purpose].unit, { significant: FIGURES });
+  value === null
+    ? '–'
+    : formatQuantity(Number(value.toPrecision(COMMON)), UNIT_SYSTEMS[system][purpose].unit, {
+        significant: FIGURES,
+      });
 
 /** "+1.0 %", "−12 %"; a dash where there is nothing to measure by. */
 export function shareText(share: number | null): string {

@@ -33,7 +33,7 @@ export interface Passport {
   readonly engine: string;
 }
 
-export interface PassportFormula {
+interface PassportFormula {
   readonly name: string;
   readonly html: string;
   /** Number of its source in the list of sources. */

@@ -30,7 +30,7 @@ export function proofRows(
       ? [
           {
             name: 'Worst point',
-            text: `${pointText(sweep.worst.at)}: ${shareOf(100 * sweep.worst.share)} % of what it may be off by`,
+            text: `${pointText(template, sweep.worst.at)}: ${shareOf(100 * sweep.worst.share)} % of what it may be off by`,
           },
         ]
       : []),
@@ -42,13 +42,16 @@ function sweepText(
   { points, drawn, refused, failed, choices }: SweepTally,
   seed: number,
 ): string {
-  const kept = Object.entries(refused).map(
-    ([rule, count]) => `${count} by “${rules.find(({ id }) => id === rule)?.title ?? rule}”`,
-  );
+  const titleOf = (rule: string) => `“${rules.find(({ id }) => id === rule)?.title ?? rule}”`;
+  const kept = Object.entries(refused);
+  const by =
+    kept.length === 1
+      ? `by ${kept.map(([rule]) => titleOf(rule))}`
+      : kept.map(([rule, count]) => `${count} by ${titleOf(rule)}`).join(', ');
   const visited = Object.values(choices).flatMap((values) => Object.values(values));
   return [
     `${counted(points, 'point')} spread over the parameter box (Latin hypercube, seed ${seed}, EI from a tenth to ten times)`,
-    ...(kept.length > 0 ? [`${drawn - points} of ${drawn} kept out, ${kept.join(', ')}`] : []),
+    ...(kept.length > 0 ? [`${drawn - points} of ${drawn} kept out ${by}`] : []),
     ...(visited.length > 0 ? [`every choice at ${Math.min(...visited)} points or more`] : []),
     ...(failed > 0 ? [`${failed} without a proven result`] : []),
   ].join('; ');
@@ -116,10 +119,14 @@ function sameText(same: ProofReport['same'], isProven: boolean | null): string {
 }
 
 /** "L = 2.435 m, a = 0.04 m, EI = 35170 kNm2". */
-export const pointText = ({ parameters, ei }: BoxPoint): string =>
+const pointText = (template: Template, { parameters, ei }: BoxPoint): string =>
   [
-    ...Object.entries(parameters).map(([symbol, value]) =>
-      typeof value === 'string' ? `${symbol} = ${value}` : `${symbol}: ${counted(value.length, 'row')}`,
-    ),
+    ...template.parameters.flatMap(({ symbol }) => {
+      const value = parameters[symbol];
+      if (value === undefined) return [];
+      return [
+        typeof value === 'string' ? `${symbol} = ${value}` : `${symbol}: ${counted(value.length, 'row')}`,
+      ];
+    }),
     `EI = ${ei}`,
   ].join(', ');

@@ -70,7 +70,7 @@ const Same = z.strictObject({
   losses: z.array(z.strictObject({ message: z.string(), ...Point })),
 });
 
-export const ReportView = z.strictObject({
+const ReportView = z.strictObject({
   passed: z.boolean(),
   reasons: z.array(z.string()),
   seed: z.int(),
@@ -83,7 +83,7 @@ export const ReportView = z.strictObject({
   /** The worst point of the sweep as a proof case, to be added to the document. */
   worst_case: z.record(z.string(), z.unknown()).nullable(),
 });
-export type ReportView = z.output<typeof ReportView>;
+type ReportView = z.output<typeof ReportView>;
 
 /** What a run of the worker's has in common, whatever it is for. */
 export const runFields = {

@@ -1,6 +1,6 @@
 /** The worker's part: proving what was asked for, chunk by chunk. */
 import { setImmediate } from 'node:timers/promises';
-import { and, eq, inArray, sql } from 'drizzle-orm';
+import { and, desc, eq, inArray, isNotNull, lt, sql } from 'drizzle-orm';
 import type { Tx } from '@/db/client';
 import { document, revision } from '@/db/schema/library';
 import { proofRun } from '@/db/schema/review';
@@ -62,15 +62,17 @@ export function runProof(task: RunTask, attempt: Attempt): Promise<void> {
   );
 }
 
-/** The template, and the issued revision that it would take the place of. */
+/** The template, and the revision that it takes the place of: the issued one, else the newest that was issued before it. */
 async function subjectOf(tx: Tx, row: RevisionRow): Promise<ProofSubject> {
-  const [issued] = await selectRevisions(
+  const { practiceId, documentId, number } = row;
+  const issued = await selectRevisions(
     tx,
-    row.practiceId,
-    and(eq(revision.documentId, row.documentId), eq(revision.state, 'issued')),
+    practiceId,
+    and(eq(revision.documentId, documentId), lt(revision.number, number), isNotNull(revision.issuedAt)),
+    [desc(revision.number)],
   );
-  const isOther = issued && issued.id !== row.id;
-  return { template: templateOf(row), issued: isOther ? templateOf(issued) : null };
+  const before = issued.find(({ state }) => state === 'issued') ?? issued[0];
+  return { template: templateOf(row), issued: before ? templateOf(before) : null };
 }
 
 /** While a run is under way, its report holds how far it has come. */

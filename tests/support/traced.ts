@@ -144,6 +144,7 @@ function faultsOf(one: Trace, scales: ReadonlyMap<string, number>): string[] {
     [isLeaf && one.parts.length > 0, 'a leaf with parts'],
     [!isLeaf && one.parts.length === 0 && Math.abs(one.value) > SAME * scale, 'nothing is behind it'],
     [isAmbiguous(one), 'two parts have one letter'],
+    ['source' in one.how && one.how.source.text === '', 'no source'],
   ] as const;
   return [
     ...faults.flatMap(([isWrong, words]) => (isWrong ? [`${where}: ${words}`] : [])),

@@ -78,8 +78,8 @@ export class CheckTraces {
 
   /** The largest of either sign, over all combinations and patterns. */
   private governing(row: CheckRow, quantity: 'moment' | 'shear'): Trace {
-    const { strength, document } = this.criteria;
-    const acting = this.acting(row, strength, document.strength.source);
+    const { strength } = this.criteria;
+    const acting = this.acting(row, strength);
     const spot = placeOf(this.fields, quantity, row.at, acting);
     const field = this.fields.of(acting);
     const [left, right] = [field.at(quantity, spot, 'left'), field.at(quantity, spot, 'right')];
@@ -144,10 +144,10 @@ export class CheckTraces {
   private acting(
     { combination: name, pattern = [] }: CheckRow,
     combinations: readonly Combination[],
-    source: CriteriaSource,
+    source?: CriteriaSource,
   ): CombinedActing {
     const combination = combinations.find((one) => one.name === name) ?? { name, factors: {} };
-    return { kind: 'combination', combination, pattern, source: sourceOf(source) };
+    return { kind: 'combination', combination, pattern, ...(source && { source: sourceOf(source) }) };
   }
 
   private limitOf(row: CheckRow): { limit: DeflectionLimit; region: Region } {

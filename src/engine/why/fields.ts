@@ -127,10 +127,12 @@ export class Fields {
   /** Where the criteria have a combination from. */
   private printedWith(name: string): Source {
     const { criteria } = this.subject;
+    if (criteria?.strength.some((combination) => combination.name === name)) {
+      const { basis, source } = criteria.document.strength;
+      return { text: basis, fromMemory: source.from_memory };
+    }
     const limit = criteria?.limits.find(({ combination }) => combination.name === name);
-    const isStrength = criteria?.strength.some((combination) => combination.name === name);
-    const source = isStrength ? criteria?.document.strength.source : limit?.source;
-    return source ? sourceOf(source) : cited('');
+    return limit ? sourceOf(limit.source) : cited('');
   }
 
   criteriaName(): string {

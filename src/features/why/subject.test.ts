@@ -1,95 +1,22 @@
-import { readFileSync } from 'node:fs';
 import { describe, expect, test } from 'vitest';
 import { type Criteria, criteriaDocument } from '@/engine/check';
-import type { UnitSystemName } from '@/engine/quantity';
-import { designationKey, materialFor } from '@/engine/section';
 import type { Template } from '@/engine/template';
 import { parseExpression } from '@/engine/template/parse';
-import { evaluateMember } from '@/features/member/evaluate';
-import { readSectionTable } from '@/features/section/import';
 import {
-  sectionTableMetaSchema,
-  toRowOrigin,
-  toSectionItem,
-  toSectionValues,
-} from '@/features/section/section';
+  demoPage,
+  MEMBERS,
+  type MemberGiven,
+  pageOf,
+  readJson,
+  sectionOf,
+} from '../../../tests/support/member-page';
 import { shippedTemplate } from '../../../tests/support/templates';
 import { type Asked, wrongIn } from '../../../tests/support/traced';
-import { toSubject } from './subject';
-
-interface DemoMember {
-  readonly mark: string;
-  readonly template: string;
-  readonly parameters: Readonly<Record<string, unknown>>;
-  readonly section?: { readonly designation: string; readonly table: string; readonly material: string };
-  readonly criteria?: string;
-  readonly self_weight?: boolean;
-  readonly job: string;
-}
-
-const readJson = (path: string): unknown => JSON.parse(readFileSync(path, 'utf8'));
-const MEMBERS = readJson('data/demo/members.json') as readonly DemoMember[];
-
-function sectionOf({ designation, table, material: id }: NonNullable<DemoMember['section']>) {
-  const meta = sectionTableMetaSchema.parse(readJson(`data/sections/${table}.json`));
-  const reading = readSectionTable(readFileSync(`data/sections/${table}.csv`, 'utf8'), meta);
-  const row = reading.ok && reading.rows.find((one) => one.key === designationKey(designation));
-  const material = materialFor(id);
-  if (!row || !material) throw new Error(`${designation} of ${id}`);
-  const item = toSectionItem(row, table, 1);
-  return {
-    values: toSectionValues(item),
-    material,
-    chosen: {
-      ...{ values: toSectionValues(item), table, material: id },
-      origin: { ...toRowOrigin(item), tableName: meta.name },
-    },
-  };
-}
-
-interface Given {
-  readonly template: Template;
-  readonly parameters: Readonly<Record<string, unknown>>;
-  readonly section?: ReturnType<typeof sectionOf> | null;
-  readonly criteria: Criteria | null;
-  readonly system: UnitSystemName;
-  readonly ownWeight?: boolean;
-}
-
-/** A member as its page has it, and what it is asked about as. */
-function pageOf({ section = null, ownWeight = true, ...given }: Given) {
-  const inputs = { ...given, section, ownWeight, patterns: true };
-  const reading = evaluateMember(inputs);
-  if (!reading.ok) throw new Error(JSON.stringify(reading.faults));
-  const { evaluation } = reading;
-  const chosen = section?.chosen ?? null;
-  const about = {
-    kind: 'member',
-    inputs,
-    evaluation,
-    revision: 1,
-    section: chosen,
-    criteriaRevision: 1,
-  } as const;
-  const subject = toSubject(about);
-  return { evaluation, subject };
-}
-
-const demoPage = ({ template, parameters, section, criteria, self_weight }: DemoMember) =>
-  pageOf({
-    template: shippedTemplate(template),
-    parameters,
-    section: section ? sectionOf(section) : null,
-    criteria: criteria ? criteriaDocument.parse(readJson(`data/criteria/${criteria}.json`)) : null,
-    system: criteria?.endsWith('-us') ? 'us' : 'metric',
-    ownWeight: self_weight ?? true,
-  });
 
 const ALL = { kind: 'all' } as const;
 
 function keysOf({ evaluation, subject }: ReturnType<typeof pageOf>): Asked[] {
   const { total, groups, strength, checks, section } = evaluation;
-  const source = { text: 'EN 1990', fromMemory: true };
   return [
     ...total.reactions.map(
       ({ vertical }, support): Asked => ({
@@ -114,7 +41,7 @@ function keysOf({ evaluation, subject }: ReturnType<typeof pageOf>): Asked[] {
       ...(['shear', 'moment', 'deflection'] as const).flatMap((quantity) =>
         (['max', 'min'] as const).flatMap((sense): Asked[] => {
           const { value, at, pattern } = extremes[quantity][sense];
-          const acting = { kind: 'combination', combination, pattern, source } as const;
+          const acting = { kind: 'combination', combination, pattern } as const;
           const key = { quantity, sense, x: at[0]!, acting } as const;
           return [
             { key: { kind: 'extreme', ...key }, value },
@@ -124,7 +51,7 @@ function keysOf({ evaluation, subject }: ReturnType<typeof pageOf>): Asked[] {
       ),
       ...reactions.flatMap(({ max, min }, support) =>
         [max, min].map(({ vertical: { value, pattern } }): Asked => {
-          const acting = { kind: 'combination', combination, pattern, source } as const;
+          const acting = { kind: 'combination', combination, pattern } as const;
           return { key: { kind: 'reaction', support, component: 'vertical', acting }, value };
         }),
       ),
@@ -184,7 +111,7 @@ const STRICT: Criteria = {
 };
 
 describe('supports that move, limits of every kind, and own weight on a slope', () => {
-  const CASES: readonly (readonly [string, Omit<Parameters<typeof pageOf>[0], 'criteria' | 'system'>])[] = [
+  const CASES: readonly (readonly [string, Omit<MemberGiven, 'criteria' | 'system'>])[] = [
     ['a sprung prop', { template: shippedTemplate('propped-cantilever-spring-uniform'), parameters: {} }],
     ['a sprung root', { template: shippedTemplate('cantilever-spring-root-uniform'), parameters: {} }],
     ['a settlement', { template: shippedTemplate('support-settlement'), parameters: { ends: 'fixed' } }],

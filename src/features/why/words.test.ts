@@ -40,7 +40,7 @@ describe('where a chain ends, in words', () => {
     ],
     [
       { kind: 'criteria', document: 'Steel 1', source: printed },
-      'EN 1990, 6.10 (from memory)',
+      'Steel 1',
       'The criteria',
       ['Steel 1', 'EN 1990, 6.10 (from memory)'],
     ],

@@ -58,7 +58,7 @@ export function leafWords({ how }: Trace): string {
     case 'material':
       return how.material;
     case 'criteria':
-      return sourceWords(how.source);
+      return how.document || sourceWords(how.source);
     case 'constant':
       return how.source.text;
   }

@@ -10,7 +10,7 @@ const member = MEMBERS.find(({ mark }) => mark === 'LF4');
 if (!member) throw new Error('the demo has its canopy');
 const { evaluation, subject } = demoPage(member);
 const traces = new Traces(subject);
-const valueOf = (key: Key | null) => (key ? Math.abs(traces.why(key).value) : Number.NaN);
+const answerTo = (key: Key | null) => (key ? Math.abs(traces.why(key).value) : Number.NaN);
 
 describe('what acts in each view of a member', () => {
   test.each(stripViews(evaluation).map((view) => [view.name, view] as const))(
@@ -21,7 +21,7 @@ describe('what acts in each view of a member', () => {
       const { solution, envelopes, reactions = solution.reactions } = view.draw();
       reactions.forEach(({ vertical }, support) => {
         const figure = { kind: 'reaction', support, component: 'vertical' } as const;
-        expect(valueOf(figureKey(figure, solution, loading))).toBeCloseTo(Math.abs(vertical), 3);
+        expect(answerTo(figureKey(figure, solution, loading))).toBeCloseTo(Math.abs(vertical), 3);
       });
       for (const quantity of ['shear', 'moment', 'deflection'] as const) {
         const { max, min } = solution.extremes[quantity];
@@ -29,7 +29,7 @@ describe('what acts in each view of a member', () => {
           envelopes?.[quantity]?.peaks ?? [max, min].map(({ at, value }) => ({ x: at[0] ?? 0, value }));
         for (const { x, value } of drawn) {
           const key = figureKey({ kind: 'peak', quantity, x, value, isZero: false }, solution, loading);
-          expect(valueOf(key), `${quantity} at ${x}`).toBeCloseTo(
+          expect(answerTo(key), `${quantity} at ${x}`).toBeCloseTo(
             Math.abs(value),
             quantity === 'deflection' ? 9 : 2,
           );
@@ -46,7 +46,7 @@ describe('what acts in each view of a member', () => {
     const cell = { quantity: 'moment', x: 2.5, side: 'left', bound: 'upper' } as const;
     const combinations = evaluation.strength.map(({ combination }) => combination);
     const [station] = evaluation.superposed.envelope(combinations, [2.5]).stations;
-    expect(valueOf(stationKey(cell, solution, loading))).toBeCloseTo(station?.moment.max.value ?? 0, 3);
+    expect(answerTo(stationKey(cell, solution, loading))).toBeCloseTo(station?.moment.max.value ?? 0, 3);
     expect(loading.at('moment', 2.5, null)).toBeNull();
   });
 

@@ -34,8 +34,6 @@ export class RigidEquations {
         if (!this.factoriseHeld(record, j > 0 ? span[j - 1]! : null, j < last ? own : null)) return false;
         inverse = this.inverse;
       } else if (j === 0 || j === last) {
-        record.leftPivot = 0;
-        record.leftEntry = 0;
         inverse = 0;
       } else {
         const diagonal = far + own.near;
@@ -103,7 +101,7 @@ export class RigidEquations {
         const N = j + 1 === last && !next.held ? next.left : 0;
         const chord = moved === 0 ? 0 : (next.rise - record.rise) * own.inverse;
         leaving = chord - own.leftTurn - own.near * M - own.cross * N;
-        end = chord + own.rightTurn + own.cross * M + own.far * N;
+        end = chord + own.rightTurn + own.cross * M; // known moments at its right end are at the beam's
       }
       if (record.held) {
         this.arriving = arriving;

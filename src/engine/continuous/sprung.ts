@@ -166,7 +166,7 @@ export class SprungEquations {
       const [from, to, own] = [support[j]!, support[j + 1]!, span[j]!];
       releaseSpan(own, piece, from, to);
       values[rightRow[j]!]! -= own.leftTurn + own.near * from.right + own.cross * to.left;
-      values[leftRow[j + 1]!]! -= own.rightTurn + own.cross * from.right + own.far * to.left;
+      values[leftRow[j + 1]!]! -= own.rightTurn + own.cross * from.right; // to.left is known only where its row is left out
     }
   }
 

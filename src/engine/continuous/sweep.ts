@@ -11,12 +11,12 @@ const FIFTH = 1 / 5;
  */
 export class Sweep {
   /** The state where the sweep has come to, beyond what acts there. */
-  private V = 0.5;
-  private M = 0.5;
-  private psi = 0.5;
-  private v = 0.5;
+  private V = NaN;
+  private M = NaN;
+  private psi = NaN;
+  private v = NaN;
   /** ψ over the first support. */
-  private firstPsi = 0.5;
+  private firstPsi = NaN;
 
   /** `moved`: 1 where the supports are moved as prescribed, 0 where they stay. */
   run(geometry: Geometry, moved: number): void {

@@ -39,7 +39,7 @@ export default defineConfig({
           include: ['src/**/*.server.test.ts', 'tests/http/**/*.test.ts'],
           fileParallelism: false,
           // Hashing a password is slow on purpose, on a busy machine all the more.
-          testTimeout: 20_000,
+          testTimeout: 60_000,
         },
       },
     ],

@@ -1,7 +1,7 @@
 import { describe, expect, test } from 'vitest';
-import { readSectionTable } from './import';
-import type { ImportFault } from './import-fault';
-import { type SectionTableMeta, sectionRowSchema, sectionTableMetaSchema } from './section';
+import { type SectionTableMeta, sectionRowSchema, sectionTableMetaSchema } from '../section';
+import type { ImportFault } from './fault';
+import { readSectionTable } from './read';
 
 const meta = (change: Partial<SectionTableMeta> = {}): SectionTableMeta => ({
   ...sectionTableMetaSchema.parse({

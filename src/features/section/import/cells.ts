@@ -1,5 +1,5 @@
 import { type DimensionName, readQuantity } from '@/engine/quantity';
-import type { ImportCode } from './import-fault';
+import type { ImportCode } from './fault';
 
 export type DecimalMark = '.' | ',';
 

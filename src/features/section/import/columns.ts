@@ -1,15 +1,8 @@
 import { type DimensionName, unitFactor, unitText } from '@/engine/quantity';
-import { cellText } from './import-cells';
-import { type ImportFault, isError, onColumn } from './import-fault';
-import {
-  FIELD_QUANTITY,
-  type Field,
-  fieldOf,
-  type Heading,
-  isNumberField,
-  readHeading,
-} from './import-headings';
-import type { SectionTableMeta } from './section';
+import type { SectionTableMeta } from '../section';
+import { cellText } from './cells';
+import { type ImportFault, isError, onColumn } from './fault';
+import { FIELD_QUANTITY, type Field, fieldOf, type Heading, isNumberField, readHeading } from './headings';
 
 export type Column = Heading & { index: number; heading: string; field: Field };
 

@@ -1,7 +1,7 @@
 import { type DimensionName, unitFactor } from '@/engine/quantity';
 import type { TabulatedName } from '@/engine/section';
-import { cellText } from './import-cells';
-import type { SectionTableMeta } from './section';
+import type { SectionTableMeta } from '../section';
+import { cellText } from './cells';
 
 type SizeName = 'h' | 'b' | 'tw' | 'tf' | 'r' | 't';
 export type NumberField = SizeName | TabulatedName;

@@ -1,9 +1,9 @@
 import { SECTION_SHAPES, type SectionShape } from '@/engine/section';
-import { cellText, type DecimalMark, hasLookAlike, isMissing, readCell } from './import-cells';
-import type { Column } from './import-columns';
-import type { ImportFault } from './import-fault';
-import { FIELD_QUANTITY, type Field, isNumberField, type NumberField } from './import-headings';
-import type { SectionTableMeta } from './section';
+import type { SectionTableMeta } from '../section';
+import { cellText, type DecimalMark, hasLookAlike, isMissing, readCell } from './cells';
+import type { Column } from './columns';
+import type { ImportFault } from './fault';
+import { FIELD_QUANTITY, type Field, isNumberField, type NumberField } from './headings';
 
 export type RowContext = { columns: readonly Column[]; mark: DecimalMark; meta: SectionTableMeta };
 

@@ -16,10 +16,11 @@ import {
   type TabulatedName,
   widthOf,
 } from '@/engine/section';
-import { halfDigit } from './import-cells';
-import type { Column } from './import-columns';
-import { type ImportFault, isError } from './import-fault';
-import { isNumberField, type NumberField } from './import-headings';
+import type { SectionRow, SectionTableMeta } from '../section';
+import { halfDigit } from './cells';
+import type { Column } from './columns';
+import { type ImportFault, isError } from './fault';
+import { isNumberField, type NumberField } from './headings';
 import {
   type Line,
   lineOf,
@@ -28,8 +29,7 @@ import {
   readNumbers,
   readShape,
   type Values,
-} from './import-values';
-import type { SectionRow, SectionTableMeta } from './section';
+} from './values';
 
 export type RowReading = { row: SectionRow | null; faults: ImportFault[] };
 

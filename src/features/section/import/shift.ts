@@ -1,8 +1,8 @@
-import { cellText } from './import-cells';
-import { isError, onLine } from './import-fault';
-import { type FileLine, filled } from './import-lines';
-import { type RowReading, readRow } from './import-row';
-import type { RowContext } from './import-values';
+import { cellText } from './cells';
+import { isError, onLine } from './fault';
+import { type FileLine, filled } from './lines';
+import { type RowReading, readRow } from './row';
+import type { RowContext } from './values';
 
 const SUSPICIOUS = 3; // errors in one row, from which a shift is likelier than as many slips
 

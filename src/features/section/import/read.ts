@@ -1,10 +1,10 @@
-import { cellText, type DecimalMark, decimalMarkOf, isMissing } from './import-cells';
-import { type Column, readColumns } from './import-columns';
-import { type ImportFault, isError, onLine } from './import-fault';
-import { isNumberField, isUnit } from './import-headings';
-import { asideOf, type FileLine, filled, linesOf } from './import-lines';
-import { readFittedRow } from './import-shift';
-import type { SectionRow, SectionTableMeta } from './section';
+import type { SectionRow, SectionTableMeta } from '../section';
+import { cellText, type DecimalMark, decimalMarkOf, isMissing } from './cells';
+import { type Column, readColumns } from './columns';
+import { type ImportFault, isError, onLine } from './fault';
+import { isNumberField, isUnit } from './headings';
+import { asideOf, type FileLine, filled, linesOf } from './lines';
+import { readFittedRow } from './shift';
 
 /** `rows` are those without an error. `faults` of a table that is read are warnings and notes. */
 export type SectionTableReading = { ok: boolean; rows: SectionRow[]; faults: ImportFault[] };

@@ -1,6 +1,6 @@
 import Papa from 'papaparse';
-import { cellText } from './import-cells';
-import { type ImportFault, onLine } from './import-fault';
+import { cellText } from './cells';
+import { type ImportFault, onLine } from './fault';
 
 export type FileLine = { number: number; cells: string[] };
 

@@ -1,0 +1,1 @@
+export { readSectionTable, type SectionTableReading } from './read';

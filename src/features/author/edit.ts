@@ -109,7 +109,7 @@ function whole(document: Written, edit: Edit): Edited {
   return { document: edit.value, inverse: { do: 'set', at: '', value: document } };
 }
 
-/** How many keys lead to a container; undefined where all but the last do. */
+/** How many keys lead to what should hold the next and does not; undefined where all but the last lead on. */
 function firstGap(document: unknown, keys: readonly string[]): number | undefined {
   let value = document;
   for (const [index, key] of keys.slice(0, -1).entries()) {
@@ -121,8 +121,8 @@ function firstGap(document: unknown, keys: readonly string[]): number | undefine
 
 const isIndex = (key: string): boolean => key === '-' || /^\d+$/.test(key);
 
-/** The value inside the lists and objects that its keys ask for, below the first of them. */
-const built = ([, ...keys]: readonly string[], value: unknown): unknown =>
+/** The value inside the lists and objects that its keys ask for. */
+const built = (keys: readonly string[], value: unknown): unknown =>
   keys.reduceRight<unknown>((inner, key) => (isIndex(key) ? [inner] : { [key]: inner }), value);
 
 interface Changed {

@@ -1,11 +1,12 @@
 import { memo, type ReactNode } from 'react';
-import { RichHtml } from '@/components/drawing/marks/RichHtml';
+import { MarkdownHtml } from '@/components/ui/MarkdownHtml';
 import { ZoneHeading } from '@/components/ui/ZoneHeading';
 import type { Template } from '@/engine/template';
 import { Why } from '@/features/why/Why';
 import { WhyGrid } from '@/features/why/WhyGrid';
 import { Formula } from './Formula';
 import { type ProofLine, type ResultLine, type RuleLine, sourceText } from './lines';
+import type { NotesHtml } from './page';
 
 type Formulas = Readonly<Record<string, string>>;
 
@@ -139,32 +140,31 @@ export function ClosedForms({ results, formulas }: ClosedFormsProps) {
   );
 }
 
+interface NotesProps {
+  readonly sources: Template['sources'];
+  readonly notes: NotesHtml;
+}
+
 /** When to use the template and when not, how it is solved, and where its formulas come from. */
-export const Notes = memo(function Notes({ template }: { readonly template: Template }) {
-  const { use, do_not_use: avoid, method, sources } = template;
+export const Notes = memo(function Notes({ sources, notes }: NotesProps) {
+  const { use, doNotUse, method, derivations } = notes;
   return (
     <div className="grid gap-12">
       <NoteList title="Use it for" items={use} />
-      <NoteList title="Do not use it for" items={avoid} />
+      <NoteList title="Do not use it for" items={doNotUse} />
       <div>
         <h3 className="mb-2 font-semibold">Method</h3>
-        {method.split(/\n{2,}/).map((paragraph) => (
-          <p key={paragraph} className="mb-6 text-schedule">
-            <RichHtml text={lowered(paragraph)} />
-          </p>
-        ))}
+        <MarkdownHtml html={method} className="text-schedule" />
       </div>
       <div>
         <h3 className="mb-2 font-semibold">Sources</h3>
         {sources.map((source) => (
           <div key={source.id} className="mb-4 text-schedule">
             <p>{sourceText(source)}</p>
-            {source.derivation && (
+            {derivations[source.id] !== undefined && (
               <details>
                 <summary className="link min-h-26 cursor-pointer">How it follows</summary>
-                <p className="mt-2 text-ink-2">
-                  <RichHtml text={lowered(source.derivation)} />
-                </p>
+                <MarkdownHtml html={derivations[source.id] ?? ''} className="mt-2 text-ink-2" />
               </details>
             )}
           </div>
@@ -174,16 +174,15 @@ export const Notes = memo(function Notes({ template }: { readonly template: Temp
   );
 });
 
-/** "R_B" in running text with its letter lowered. */
-const lowered = (text: string): string => text.replaceAll(/(?<=[A-Za-zθδ])_([A-Za-z0-9θ]+)/g, '_{$1}');
-
 function NoteList({ title, items }: { readonly title: string; readonly items: readonly string[] }) {
   return (
     <div>
       <h3 className="mb-2 font-semibold">{title}</h3>
       <ul className="grid list-disc gap-2 pl-18 text-schedule">
         {items.map((item) => (
-          <li key={item}>{item}</li>
+          <li key={item}>
+            <MarkdownHtml html={item} />
+          </li>
         ))}
       </ul>
     </div>

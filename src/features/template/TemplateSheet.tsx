@@ -215,7 +215,7 @@ const RulesAndForms = memo(function RulesAndForms({ data, rested, note, axial }:
 
 /** What is said of the template, whatever the values. */
 const ProofAndNotes = memo(function ProofAndNotes({ data }: Pick<RulesProps, 'data'>) {
-  const { template, proof, row, engineNow, engineVersion } = data;
+  const { template, notes, proof, row, engineNow, engineVersion } = data;
   return (
     <>
       <Zone letter="G" title="Proof cases" note={proofNote(proof)}>
@@ -226,7 +226,7 @@ const ProofAndNotes = memo(function ProofAndNotes({ data }: Pick<RulesProps, 'da
         </p>
       </Zone>
       <Zone letter="H" title="Notes">
-        <Notes template={template} />
+        <Notes sources={template.sources} notes={notes} />
       </Zone>
     </>
   );

@@ -9,11 +9,19 @@ import { chooseSection } from '@/features/section/choose.server';
 import { toRowOrigin } from '@/features/section/section';
 import { AppError } from '@/lib/app-error';
 import { initialsOf } from '@/lib/initials';
+import { markdown } from '@/lib/markdown';
 import { OWN_STIFFNESS, readStiffness, readValues, type Stiffness } from './address';
 import { derivationOf } from './answer';
 import { type CatalogueData, sendCard } from './catalogue-card';
 import { toProofLines } from './lines';
-import { dayText, evaluatePage, type HistoryLine, type PickedSection, type TemplatePageData } from './page';
+import {
+  dayText,
+  evaluatePage,
+  type HistoryLine,
+  type NotesHtml,
+  type PickedSection,
+  type TemplatePageData,
+} from './page';
 import { toRaw } from './raw';
 import { readReleases, toRedundant } from './release';
 import { pickSection } from './section-pick';
@@ -42,6 +50,7 @@ export async function readTemplatePage(
     system,
     row,
     template,
+    notes: notesOf(template),
     history: read.history.map(toHistoryLine),
     proof: toProofLines(template, read.proof, system),
     engineVersion: read.engineVersion,
@@ -83,6 +92,15 @@ async function sectionOf(
     throw error;
   }
 }
+
+const notesOf = ({ use, do_not_use: doNotUse, method, sources }: Template): NotesHtml => ({
+  use: use.map(markdown),
+  doNotUse: doNotUse.map(markdown),
+  method: markdown(method),
+  derivations: Object.fromEntries(
+    sources.flatMap(({ id, derivation }) => (derivation ? [[id, markdown(derivation)]] : [])),
+  ),
+});
 
 /** Each formula of the page that does not change with the values, set once. */
 function formulasOf({ rules, results }: Template): Record<string, string> {

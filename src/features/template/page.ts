@@ -29,11 +29,21 @@ export interface HistoryLine {
   readonly change: string;
 }
 
+/** The template's notes as HTML. */
+export interface NotesHtml {
+  readonly use: readonly string[];
+  readonly doNotUse: readonly string[];
+  readonly method: string;
+  /** How a source's formulas follow, by its id. */
+  readonly derivations: Readonly<Record<string, string>>;
+}
+
 export interface TemplatePageData {
   readonly practice: string;
   readonly system: UnitSystemName;
   readonly row: TemplateRow;
   readonly template: Template;
+  readonly notes: NotesHtml;
   readonly history: readonly HistoryLine[];
   readonly proof: readonly ProofLine[];
   /** What the revision was written on, and what runs now. */

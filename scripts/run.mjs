@@ -16,18 +16,24 @@ const DEV_ORIGIN = 'http://localhost:4322';
 
 function main([name, ...args]) {
   if (!Object.hasOwn(PROGRAMS, name)) throw new Stop(`Give one of: ${Object.keys(PROGRAMS).join(', ')}.`);
+  const home = openHome();
   const child = spawn(process.execPath, [...PROGRAMS[name], ...args], {
     cwd: ROOT,
     stdio: 'inherit',
-    env: { ORIGIN: DEV_ORIGIN, DEMO: 'true', ...process.env, DATABASE_URL: databaseUrl() },
+    env: {
+      ORIGIN: DEV_ORIGIN,
+      DEMO: 'true',
+      ...readJson(home.running)?.store,
+      ...process.env,
+      DATABASE_URL: databaseUrl(home),
+    },
   });
   child.on('exit', (code) => {
     process.exitCode = code ?? 1;
   });
 }
 
-function databaseUrl() {
-  const home = openHome();
+function databaseUrl(home) {
   if (process.env.DATABASE_URL) return urls(process.env.DATABASE_URL, home).app;
   const record = readJson(home.running);
   if (record?.database && isSame(record.start, 'start.mjs')) return record.database;

@@ -8,6 +8,7 @@ import { Stop, step } from './support/command.mjs';
 import { openDatabase, prepareDatabase } from './support/database.mjs';
 import { catchMail } from './support/demo-mail.mjs';
 import { openHome, readJson, writeJson } from './support/home.mjs';
+import { startObjectStore } from './support/object-store.mjs';
 import { ensureNodePackages } from './support/packages.mjs';
 import { isReady, portIsFree } from './support/ports.mjs';
 import { endProcess, identify, isSame, waitUntil } from './support/processes.mjs';
@@ -79,8 +80,14 @@ async function tidyUp(record) {
 async function startChildren(home, record, database) {
   const mail = demo === 'true' && !process.env.PUTLOG_SMTP_URL ? await catchMail() : null;
   if (mail) ends.push(mail.stop);
+  const store =
+    demo === 'true' && !process.env.PUTLOG_S3_BUCKET ? await startObjectStore(home.objects) : null;
+  if (store) ends.push(store.stop);
+  // For the development server, which shares what is running.
+  record.store = store?.env;
   const env = {
     ...mail?.env,
+    ...store?.env,
     DATABASE_URL: database.app,
     PORT: String(port),
     ORIGIN: origin,

@@ -10,6 +10,7 @@ import { ROOT, Stop, step } from './support/command.mjs';
 import { createDatabase, prepareDatabase, urls } from './support/database.mjs';
 import { catchMail } from './support/demo-mail.mjs';
 import { openHome, readJson } from './support/home.mjs';
+import { startObjectStore } from './support/object-store.mjs';
 import { ensureDebianPackages, ensureNodePackages } from './support/packages.mjs';
 import { freePort } from './support/ports.mjs';
 
@@ -58,7 +59,9 @@ function pure() {
 
 async function database() {
   const { owner, app } = await newDatabase('putlog_test', { demo: false });
-  return vitest('database', { DATABASE_URL: app, OWNER_DATABASE_URL: owner });
+  const store = await startObjectStore(home.objects);
+  ends.push(store.stop);
+  return vitest('database', { ...store.env, DATABASE_URL: app, OWNER_DATABASE_URL: owner });
 }
 
 /** The journeys through the screens, on a server of their own with the demo practice. */
@@ -70,8 +73,11 @@ async function e2e() {
   const origin = `http://localhost:${port}`;
   const mail = await catchMail();
   ends.push(mail.stop);
+  const store = await startObjectStore(home.objects);
+  ends.push(store.stop);
   const settings = {
     ...mail.env,
+    ...store.env,
     DATABASE_URL: app,
     PORT: String(port),
     ORIGIN: origin,

@@ -20,6 +20,7 @@ export function openHome(folder = homeFolder()) {
   return {
     folder,
     data: join(folder, 'postgres'),
+    objects: join(folder, 'objects'),
     running: join(folder, 'running.json'),
     ...readJson(state),
   };

@@ -2,7 +2,7 @@ import { createServer } from 'node:http';
 import { BlockList, isIPv6 } from 'node:net';
 import compression from 'compression';
 import sirv from 'sirv';
-import { answerProblem, readBody, refusesLength } from './body.mjs';
+import { answerProblem, isUpload, readBody, refusesLength, throwAway } from './body.mjs';
 
 /**
  * The HTTP server in front of Astro's handler: built files, compression, a limit to bodies, and headers that say what
@@ -46,7 +46,8 @@ export function createWebServer({ handler, folder, origin, proxies = '' }) {
   };
 
   const server = createServer(
-    { requestTimeout: 60_000, headersTimeout: 20_000, keepAliveTimeout: 65_000 },
+    // A file of 50 MB over a slow line; other bodies have a time of their own.
+    { requestTimeout: 600_000, headersTimeout: 20_000, keepAliveTimeout: 65_000 },
     serve,
   );
   // Asked first whether the body is welcome, we can refuse it before it is sent.
@@ -70,6 +71,7 @@ const CLAIM = /^(x-forwarded-.*|x-real-ip|forwarded)$/;
 
 async function passOn(handler, request, response) {
   try {
+    if (isUpload(request)) return await passUpload(handler, request, response);
     const body = await readBody(request);
     if (body === null) return answerProblem(request, response, 413);
     // An iterable that Astro takes for the body; the request itself has been read.
@@ -82,6 +84,15 @@ async function passOn(handler, request, response) {
     if (response.headersSent) response.destroy();
     else answerProblem(request, response, 500);
   }
+}
+
+/** The body as it comes. Whoever stops reading before its end still gets the answer through. */
+async function passUpload(handler, request, response) {
+  if (refusesLength(request)) return answerProblem(request, response, 413);
+  const chunks = request.iterator({ destroyOnReturn: false });
+  request.body = { [Symbol.asyncIterator]: () => chunks };
+  await handler(request, response);
+  throwAway(request);
 }
 
 /** Built files carry a hash of their content in their name. */

@@ -8,5 +8,6 @@ export const GET = openEndpoint({ summary: 'Whether the process can serve' }, as
   if (!ready) log.error('not ready', { ...state });
   // Open to anybody: the host that the driver names stays in the log.
   const database = state.database && 'does not answer';
-  return answer({ ready, ...state, database }, { status: ready ? 200 : 503 });
+  const store = state.store && 'does not answer';
+  return answer({ ready, ...state, database, store }, { status: ready ? 200 : 503 });
 });

@@ -118,7 +118,7 @@ describe('answers', () => {
     const { status, json } = await ask('GET', '/readyz');
     expect([status, json]).toEqual([
       json.ready ? 200 : 503,
-      { ready: json.queue === null, database: null, migrations: null, queue: json.queue },
+      { ready: json.queue === null, database: null, migrations: null, queue: json.queue, store: null },
     ]);
   });
 });

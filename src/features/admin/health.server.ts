@@ -1,6 +1,7 @@
 import { sql } from 'drizzle-orm';
 import { processBeat } from '@/db/schema/process';
 import { withoutPractice } from '@/db/tenancy';
+import { store } from '@/services/store';
 import journal from '../../../drizzle/meta/_journal.json';
 
 /** Seconds between two signs of life of the worker, and after how many it counts as gone. */
@@ -11,6 +12,8 @@ export interface Readiness {
   readonly database: string | null;
   readonly migrations: string | null;
   readonly queue: string | null;
+  /** Of the place for files; well where none is set up. Without it only imports wait. */
+  readonly store: string | null;
 }
 
 export const isReady = ({ database, migrations, queue }: Readiness): boolean =>
@@ -18,6 +21,11 @@ export const isReady = ({ database, migrations, queue }: Readiness): boolean =>
 
 /** Whether this process could serve a request from end to end, now. */
 export async function readiness(now = new Date()): Promise<Readiness> {
+  const [kept, fault] = await Promise.all([databaseReadiness(now), store()?.fault() ?? null]);
+  return { ...kept, store: fault };
+}
+
+async function databaseReadiness(now: Date): Promise<Omit<Readiness, 'store'>> {
   try {
     const db = withoutPractice();
     const [applied] = await db.execute<{ at: string }>(

@@ -32,7 +32,11 @@ export const member = pgTable(
     templateRevisionId: uuid().notNull(),
     sectionId: uuid(),
     material: text(),
+    /** The set that the material is read from; null in members older than the sets. */
+    materialRevisionId: uuid(),
     criteriaRevisionId: uuid(),
+    /** The combinations that the criteria are held against; null where the criteria have their own. */
+    combinationRevisionId: uuid(),
     parameters: jsonb().$type<unknown>().notNull(),
     settings: jsonb().$type<unknown>().notNull(),
     status: text({ enum: MEMBER_STATUSES }).notNull().default('draft'),
@@ -65,6 +69,16 @@ export const member = pgTable(
       foreignColumns: [revision.practiceId, revision.id],
     }),
     foreignKey({
+      name: 'member_material_fk',
+      columns: [table.practiceId, table.materialRevisionId],
+      foreignColumns: [revision.practiceId, revision.id],
+    }),
+    foreignKey({
+      name: 'member_combination_fk',
+      columns: [table.practiceId, table.combinationRevisionId],
+      foreignColumns: [revision.practiceId, revision.id],
+    }),
+    foreignKey({
       columns: [table.practiceId, table.sectionId],
       foreignColumns: [section.practiceId, section.id],
     }),
@@ -75,6 +89,8 @@ export const member = pgTable(
     index('member_template').on(table.practiceId, table.templateRevisionId),
     index('member_section').on(table.practiceId, table.sectionId),
     index('member_criteria').on(table.practiceId, table.criteriaRevisionId),
+    index('member_material').on(table.practiceId, table.materialRevisionId),
+    index('member_combination').on(table.practiceId, table.combinationRevisionId),
     check('member_status', oneOf(table.status, MEMBER_STATUSES)),
     check('member_fingerprint', sql`${table.fingerprint} is null or ${table.fingerprint} ~ '^[0-9a-f]{64}$'`),
     check(

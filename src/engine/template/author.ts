@@ -5,6 +5,18 @@ import { type Template, templateSchema } from './document';
 import { parseExpression } from './parse';
 import type { Expression } from './tree';
 
+export { type Expected, expressionFaults } from './check-expression';
+export { type Kinds, nameKind } from './dimension';
+export {
+  columnKinds,
+  type Declared,
+  figureKinds,
+  isReserved,
+  kindsOf,
+  ruleKinds,
+  type Spoken,
+} from './scope';
+export { isSymbol } from './tree';
 export { checkTemplate };
 
 const writtenExpression = z.string().transform((text, context): Expression => {

@@ -18,8 +18,22 @@ export const isReserved = (symbol: string): boolean =>
 
 const SHEAR = ['included', 'left-out'] as const;
 
+/** Of a parameter or a column, what decides its kind. */
+export type Declared =
+  | Pick<QuantityParameter, 'kind' | 'symbol' | 'dimension'>
+  | { kind: 'choice'; symbol: string; options: readonly { value: string }[] }
+  | { kind: 'group'; symbol: string }
+  | { kind: 'rows'; symbol: string; columns: readonly Declared[] };
+
+/** Of a template, what its expressions speak of. */
+export type Spoken = {
+  parameters: readonly Declared[];
+  derived: readonly { symbol: string; expression: { tree: Tree } }[];
+  beam: { supports: readonly { when?: unknown }[] };
+};
+
 /** A parameter's own kind. */
-function kindOfParameter(parameter: Parameter | Column): Kind {
+function kindOfParameter(parameter: Declared): Kind {
   switch (parameter.kind) {
     case 'quantity':
       return ofDimension(DIMENSIONS[parameter.dimension]);
@@ -32,11 +46,11 @@ function kindOfParameter(parameter: Parameter | Column): Kind {
   }
 }
 
-export const columnKinds = (columns: readonly Column[]): Kinds =>
+export const columnKinds = (columns: readonly Declared[]): Kinds =>
   new Map(columns.map((column) => [column.symbol, kindOfParameter(column)]));
 
 /** Kinds of parameters, EI and derived values; a derived value that is unsound is left out. */
-export function kindsOf(template: Template): Map<string, Kind> {
+export function kindsOf(template: Omit<Spoken, 'beam'>): Map<string, Kind> {
   const kinds = new Map<string, Kind>(
     template.parameters.map((parameter) => [parameter.symbol, kindOfParameter(parameter)]),
   );
@@ -49,7 +63,7 @@ export function kindsOf(template: Template): Map<string, Kind> {
 }
 
 /** Kinds of a rule: the result's symbols besides. */
-export function ruleKinds(template: Template): Map<string, Kind> {
+export function ruleKinds(template: Spoken): Map<string, Kind> {
   const kinds = withReactions(template, template.beam.supports);
   kinds.set('h', ofDimension(DIMENSIONS.length));
   kinds.set('shear', { is: 'text', values: SHEAR });
@@ -58,13 +72,13 @@ export function ruleKinds(template: Template): Map<string, Kind> {
 }
 
 /** Kinds of a figure: the reactions besides, as many as there always are. */
-export const figureKinds = (template: Template): Map<string, Kind> =>
+export const figureKinds = (template: Spoken): Map<string, Kind> =>
   withReactions(
     template,
     template.beam.supports.filter(({ when }) => when === undefined),
   );
 
-function withReactions(template: Template, supports: readonly unknown[]): Map<string, Kind> {
+function withReactions(template: Spoken, supports: readonly unknown[]): Map<string, Kind> {
   const kinds = kindsOf(template);
   for (const index of supports.keys()) kinds.set(reactionSymbol(index), ofDimension(DIMENSIONS.force));
   return kinds;

@@ -4,17 +4,14 @@ import type { Geometry } from './geometry';
 
 /** The diagrams as the beam solver's: exact piecewise polynomials, all of one beam on the same breaks. Never −0. */
 export function diagramsOf({ points, piece, states }: Geometry): Diagrams {
+  const pieces = points - 1;
   const breaks = new Float64Array(points);
   for (let k = 0; k < points; k++) breaks[k] = piece[k]!.from;
-  const diagram = (degree: number): Piecewise => ({
-    breaks,
-    degree,
-    coefficients: new Float64Array((points - 1) * (degree + 1)),
-  });
-  const shear = diagram(2);
-  const moment = diagram(3);
-  const slope = diagram(4);
-  const deflection = diagram(5);
+  const memory = new Float64Array(18 * pieces); // to allocate takes longer than to fill
+  const shear: Piecewise = { breaks, degree: 2, coefficients: memory.subarray(0, 3 * pieces) };
+  const moment: Piecewise = { breaks, degree: 3, coefficients: memory.subarray(3 * pieces, 7 * pieces) };
+  const slope: Piecewise = { breaks, degree: 4, coefficients: memory.subarray(7 * pieces, 12 * pieces) };
+  const deflection: Piecewise = { breaks, degree: 5, coefficients: memory.subarray(12 * pieces) };
   for (let k = 0; k + 1 < points; k++) {
     const { bending: b, shearing: g, start, rate, curvature } = piece[k]!;
     const V = states[8 * k]! + 0;

@@ -1,6 +1,6 @@
 import type { Cases, Sense } from './cases';
-import { type Arrangement, actingFactors, type Curves, dot } from './curves';
-import { horner, UnitRoots } from './roots';
+import { type Arrangement, type Curves, dot, readFactors } from './curves';
+import { horner, type UnitRoots, WIDTH } from './roots';
 
 /** Values nearer to an extreme than this part of the largest magnitude attain it, as in a solution's own extremes. */
 const TIE = 1e-9;
@@ -11,45 +11,51 @@ const COINCIDENT = 1e-9;
 
 /** Where one arrangement attains a value: at ends of pieces and turning points, ascending; of a constant piece its ends. */
 export class AttainedPlaces {
-  private readonly roots = new UnitRoots();
-  private readonly sum: Float64Array;
-  private readonly slope: Float64Array;
+  private readonly sum = new Float64Array(WIDTH);
+  private readonly slope = new Float64Array(WIDTH);
+  private readonly factors: Float64Array;
+  private curves!: Curves;
+  private size = 0;
 
   constructor(
-    private readonly curves: Curves,
     private readonly cases: Cases,
-    /** The largest magnitude of the quantity. */
-    private readonly size: number,
+    private readonly roots: UnitRoots,
   ) {
-    this.sum = new Float64Array(curves.degree + 1);
-    this.slope = new Float64Array(curves.degree + 1);
+    this.factors = new Float64Array(cases.count);
+  }
+
+  /** The curves of a quantity, and its largest magnitude. */
+  take(curves: Curves, size: number): void {
+    this.curves = curves;
+    this.size = size;
   }
 
   /** The positions where sense · the arrangement's curve comes to `value`. */
   find(arrangement: Arrangement, sense: Sense, value: number): number[] {
     const { breaks } = this.curves;
-    const factors = actingFactors(this.cases, arrangement);
+    readFactors(this.cases, arrangement, this.factors);
     const least = value - TIE * this.size;
     const at: number[] = [];
     for (let k = 0; k + 1 < breaks.length; k++) {
-      if (!this.reaches(k, factors, sense, least)) continue;
-      for (const t of this.placesIn(k, factors, sense, least)) this.add(at, k, t);
+      if (!this.reaches(k, sense, least)) continue;
+      for (const t of this.placesIn(k, sense, least)) this.add(at, k, t);
     }
     return at;
   }
 
   /** Whether the bounds of a piece let the arrangement come to `least` there. */
-  private reaches(k: number, factors: Float64Array, sense: Sense, least: number): boolean {
+  private reaches(k: number, sense: Sense, least: number): boolean {
     const { degree, count, control } = this.curves;
+    const { factors } = this;
     for (let j = 0; j <= 2 * degree; j++) {
       if (sense * dot(factors, control, (k * (2 * degree + 1) + j) * count) >= least) return true;
     }
     return false;
   }
 
-  private placesIn(k: number, factors: Float64Array, sense: Sense, least: number): number[] {
+  private placesIn(k: number, sense: Sense, least: number): number[] {
     const { degree, count, power } = this.curves;
-    const { sum, slope } = this;
+    const { sum, slope, factors } = this;
     for (let j = 0; j <= degree; j++) {
       sum[j] = sense * dot(factors, power, (k * (degree + 1) + j) * count);
       if (j > 0) slope[j - 1] = sum[j]! * j;
@@ -75,7 +81,8 @@ export class AttainedPlaces {
   /** Without repeats: breaks as they are, turning points only where no other position is so near. */
   private add(at: number[], k: number, t: number): void {
     const { breaks } = this.curves;
-    const [from, to] = [breaks[k]!, breaks[k + 1]!];
+    const from = breaks[k]!;
+    const to = breaks[k + 1]!;
     const x = t === 0 ? from : t === 1 ? to : from + t * (to - from);
     const last = at.at(-1);
     const isBreak = t === 0 || t === 1;

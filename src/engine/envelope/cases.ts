@@ -17,23 +17,39 @@ export type Cases = {
   readonly spans: readonly number[];
   /** Factor of source i in combination c at c·count + i. */
   readonly factors: Float64Array;
+  /** How many groups there are, the movements of the supports one of them, and the group of each source. */
+  readonly groups: number;
+  readonly groupOf: Int32Array;
+  /** Factor of group g in combination c at c·groups + g. */
+  readonly groupFactors: Float64Array;
 };
 
 /** `sources`: those that always act first, then span by span. */
 export function casesOf(sources: readonly Source[], combinations: readonly Combination[]): Cases {
   const count = sources.length;
-  const spans = [...new Set(sources.flatMap(({ span }) => (span === null ? [] : [span])))];
-  const starts = spans.map((span) => sources.findIndex((source) => source.span === span));
-  const factors = combinations.flatMap((combination) =>
-    sources.map(({ group }) => (group === null ? 1 : factorOf(combination, group))),
-  );
-  return {
-    combinations,
-    count,
-    starts: Int32Array.of(0, ...starts, count),
-    spans,
-    factors: Float64Array.from(factors),
-  };
+  const groups = [...new Set(sources.map(({ group }) => group))];
+  const groupOf = Int32Array.from(sources.map(({ group }) => groups.indexOf(group)));
+  const groupFactors = new Float64Array(combinations.length * groups.length);
+  const factors = new Float64Array(combinations.length * count);
+  for (let c = 0; c < combinations.length; c++) {
+    for (let g = 0; g < groups.length; g++) {
+      const group = groups[g]!;
+      groupFactors[c * groups.length + g] = group === null ? 1 : factorOf(combinations[c]!, group);
+    }
+    for (let i = 0; i < count; i++) factors[c * count + i] = groupFactors[c * groups.length + groupOf[i]!]!;
+  }
+  return { combinations, count, ...partsOf(sources), factors, groups: groups.length, groupOf, groupFactors };
+}
+
+function partsOf(sources: readonly Source[]): Pick<Cases, 'starts' | 'spans'> {
+  const spans: number[] = [];
+  const starts = [0];
+  sources.forEach(({ span }, i) => {
+    if (span === null || span === spans.at(-1)) return;
+    spans.push(span);
+    starts.push(i);
+  });
+  return { spans, starts: Int32Array.of(...starts, sources.length) };
 }
 
 /** 1 for the largest value of a quantity, −1 for the smallest. */
@@ -64,6 +80,7 @@ export class Adverse {
 
   constructor(readonly cases: Cases) {}
 
+  /** At a place where `values[at + i]` is the quantity under source i alone. */
   add(values: Float64Array, at: number, combination: number): void {
     const { cases } = this;
     let least = shareOf(cases, 0, combination, values, at);

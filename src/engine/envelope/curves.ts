@@ -21,19 +21,33 @@ export function curvesOf(sources: readonly Piecewise[]): Curves {
   const breaks = sources[0]?.breaks ?? new Float64Array([0, 1]);
   const count = sources.length;
   const degree = sources.reduce((highest, source) => Math.max(highest, source.degree), 0);
-  const power = new Float64Array((breaks.length - 1) * (degree + 1) * count);
+  const pieces = breaks.length - 1;
+  const powers = pieces * (degree + 1) * count;
+  // To allocate takes longer than to fill.
+  const memory = new Float64Array(powers + pieces * (2 * degree + 1) * count);
+  const curves = {
+    breaks,
+    degree,
+    count,
+    power: memory.subarray(0, powers),
+    control: memory.subarray(powers),
+  };
   sources.forEach((source, i) => {
     if (!sameBreaks(breaks, source.breaks)) throw new RangeError('the sources have breaks of their own');
-    scaleInto(power, source, degree, count, i);
+    readPowers(curves, source, i);
   });
-  return { breaks, degree, count, power, control: controlOf(power, degree, count) };
+  readControl(curves);
+  return curves;
 }
 
-const sameBreaks = (a: Float64Array, b: Float64Array): boolean =>
-  a === b || (a.length === b.length && a.every((x, k) => x === b[k]));
+function sameBreaks(a: Float64Array, b: Float64Array): boolean {
+  if (a === b) return true;
+  for (let k = 0; k < a.length; k++) if (a[k] !== b[k]) return false;
+  return a.length === b.length;
+}
 
-function scaleInto(power: Float64Array, source: Piecewise, degree: number, count: number, i: number): void {
-  const { breaks, coefficients } = source;
+function readPowers({ breaks, degree, count, power }: Curves, source: Piecewise, i: number): void {
+  const { coefficients } = source;
   const width = source.degree + 1;
   for (let k = 0; k + 1 < breaks.length; k++) {
     const h = breaks[k + 1]! - breaks[k]!;
@@ -45,42 +59,39 @@ function scaleInto(power: Float64Array, source: Piecewise, degree: number, count
   }
 }
 
-function controlOf(power: Float64Array, degree: number, count: number): Float64Array {
-  const pieces = power.length / ((degree + 1) * count);
-  const control = new Float64Array(pieces * (2 * degree + 1) * count);
-  const whole = new Float64Array(degree + 1);
-  for (let k = 0; k < pieces; k++) {
-    for (let i = 0; i < count; i++) {
-      toBernstein(power, k * (degree + 1) * count + i, count, whole);
-      halve(whole, control, k * (2 * degree + 1) * count + i, count);
-    }
-  }
-  return control;
-}
-
-/** bⱼ = Σ C(j,i)/C(d,i)·aᵢ over i ≤ j, from tⁱ = Σ C(j,i)/C(d,i)·Bⱼ(t) over j ≥ i. */
-function toBernstein(power: Float64Array, first: number, step: number, whole: Float64Array): void {
-  const degree = whole.length - 1;
-  for (let j = 0; j <= degree; j++) {
-    let weight = 1;
-    let sum = 0;
-    for (let i = 0; i <= j; i++) {
-      sum += weight * power[first + i * step]!;
-      weight *= (j - i) / (degree - i);
-    }
-    whole[j] = sum;
+function readControl({ breaks, degree, count, power, control }: Curves): void {
+  const rows = new Float64Array((degree + 1) * count);
+  for (let k = 0; k + 1 < breaks.length; k++) {
+    for (let n = 0; n < rows.length; n++) rows[n] = power[k * rows.length + n]!;
+    toBernstein(rows, degree, count);
+    halve(rows, degree, count, control, k * (2 * degree + 1) * count);
   }
 }
 
-/** Cuts at t = 1/2 (de Casteljau's algorithm). `whole` is used up. */
-function halve(whole: Float64Array, control: Float64Array, first: number, step: number): void {
-  const degree = whole.length - 1;
-  control[first] = whole[0]!;
-  control[first + 2 * degree * step] = whole[degree]!;
+/**
+ * Turns coefficients of powers into those of Bernstein's polynomials, bⱼ = Σ C(j,i)/C(d,i)·aᵢ over i ≤ j: divided by
+ * C(d,i), then summed as in Pascal's triangle. Row j holds those of all sources.
+ */
+function toBernstein(rows: Float64Array, degree: number, count: number): void {
+  let binomial = 1;
+  for (let i = 1; i < degree; i++) {
+    binomial *= (degree + 1 - i) / i;
+    for (let n = i * count; n < (i + 1) * count; n++) rows[n]! /= binomial;
+  }
   for (let r = 1; r <= degree; r++) {
-    for (let i = 0; i <= degree - r; i++) whole[i] = (whole[i]! + whole[i + 1]!) / 2;
-    control[first + r * step] = whole[0]!;
-    control[first + (2 * degree - r) * step] = whole[degree - r]!;
+    for (let n = (degree + 1) * count - 1; n >= r * count; n--) rows[n]! += rows[n - count]!;
+  }
+}
+
+/** Cuts at t = 1/2 (de Casteljau's algorithm): the rows of the left half, then of the right. `rows` is used up. */
+function halve(rows: Float64Array, degree: number, count: number, into: Float64Array, at: number): void {
+  for (let r = 0; r <= degree; r++) {
+    const last = (degree - r) * count;
+    for (let i = 0; i < count; i++) {
+      into[at + r * count + i] = rows[i]!;
+      into[at + (2 * degree - r) * count + i] = rows[last + i]!;
+    }
+    for (let n = 0; n < last; n++) rows[n] = (rows[n]! + rows[n + count]!) / 2;
   }
 }
 
@@ -96,28 +107,35 @@ export function between(curves: Curves, first: number, last: number): Curves {
   };
 }
 
-/** The values of all sources at t of piece k, by Horner's rule. */
-export function valuesAt({ degree, count, power }: Curves, k: number, t: number, values: Float64Array): void {
+/** Writes the values of all sources at t of piece k, by Horner's rule, into values[at] and on. */
+export function valuesAt(
+  { degree, count, power }: Curves,
+  k: number,
+  t: number,
+  values: Float64Array,
+  at: number,
+): void {
   const first = k * (degree + 1) * count;
-  values.fill(0);
-  for (let j = degree; j >= 0; j--) {
-    for (let i = 0; i < count; i++) values[i] = values[i]! * t + power[first + j * count + i]!;
+  for (let i = 0; i < count; i++) {
+    let value = 0;
+    for (let j = degree; j >= 0; j--) value = value * t + power[first + j * count + i]!;
+    values[at + i] = value;
   }
 }
 
 /** A combination, by its index, with the loads of the spans in its pattern. */
 export type Arrangement = { readonly combination: number; readonly pattern: readonly number[] };
 
-/** The factor of each source in an arrangement; 0 where its span is not loaded. */
-export function actingFactors(
+/** Writes the factor of each source in an arrangement: 0 where its span is not loaded. */
+export function readFactors(
   { count, starts, spans, factors }: Cases,
   { combination, pattern }: Arrangement,
-) {
-  const acting = factors.slice(combination * count, (combination + 1) * count);
-  spans.forEach((span, p) => {
-    if (!pattern.includes(span)) acting.fill(0, starts[p + 1]!, starts[p + 2]!);
-  });
-  return acting;
+  into: Float64Array,
+): void {
+  for (let i = 0; i < count; i++) into[i] = factors[combination * count + i]!;
+  for (let p = 0; p < spans.length; p++) {
+    if (!pattern.includes(spans[p]!)) into.fill(0, starts[p + 1]!, starts[p + 2]!);
+  }
 }
 
 export function dot(factors: Float64Array, values: Float64Array, at: number): number {

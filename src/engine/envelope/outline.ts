@@ -12,8 +12,9 @@ type Stretch = { readonly from: number; readonly to: number; readonly a: Float64
 
 /** The most (sense 1) or the least (−1) over all combinations and patterns all along the beam, exactly, for a drawing. */
 export function envelopeCurve(curves: Curves, cases: Cases, sense: Sense): Piecewise {
-  const envelope = new PieceEnvelope(curves, cases, 0);
   const roots = new UnitRoots();
+  const envelope = new PieceEnvelope(cases, roots);
+  envelope.take(curves, 0);
   const breaks = [curves.breaks[0]!];
   const pieces: number[][] = [];
   for (let k = 0; k + 1 < curves.breaks.length; k++) {

@@ -1,31 +1,33 @@
 import { type Cases, type Sense, shareOf } from './cases';
 import type { Curves } from './curves';
-import { horner, UnitRoots } from './roots';
-
-const WIDTH = 6; // coefficients of a fifth-degree polynomial
+import { horner, type UnitRoots, WIDTH } from './roots';
 
 /**
  * The envelope of a combination within one piece. Between the zeros of the spans' shares the same spans are adverse
  * throughout, so that it is one polynomial of t there.
  */
 export class PieceEnvelope {
-  private readonly roots = new UnitRoots();
   /** What is adverse throughout the piece, and what is so between two neighbouring zeros. */
   private readonly steady = new Float64Array(WIDTH);
   private readonly sum = new Float64Array(WIDTH);
   /** The shares that change their sign within the piece, and how many there are. */
-  private readonly changing: Float64Array[];
+  private readonly changing: Float64Array[] = [];
   private changes = 0;
   private readonly cuts: Float64Array;
+  private curves!: Curves;
+  private nothing = 0;
 
   constructor(
-    private readonly curves: Curves,
     private readonly cases: Cases,
-    /** A share that stays within this of nothing is rounding's. */
-    private readonly nothing: number,
+    private readonly roots: UnitRoots,
   ) {
-    this.changing = cases.spans.map(() => new Float64Array(WIDTH));
     this.cuts = new Float64Array(2 + cases.spans.length * (WIDTH - 1));
+  }
+
+  /** A share that stays within `nothing` of nothing is rounding's. */
+  take(curves: Curves, nothing: number): void {
+    this.curves = curves;
+    this.nothing = nothing;
   }
 
   /**
@@ -41,7 +43,8 @@ export class PieceEnvelope {
     this.collect(k, combination, sense);
     const cuts = this.cutAtZeros();
     for (let i = 1; i < cuts; i++) {
-      const [from, to] = [this.cuts[i - 1]!, this.cuts[i]!];
+      const from = this.cuts[i - 1]!;
+      const to = this.cuts[i]!;
       this.sum.set(this.steady);
       this.addAdverse((from + to) / 2);
       visit(from, to, this.sum);
@@ -56,8 +59,14 @@ export class PieceEnvelope {
     for (let part = 1; part <= this.cases.spans.length; part++) {
       const sign = this.signOf(part, k, combination, sense);
       if (sign > 0) this.addShare(part, k, combination, sense, this.steady);
-      else if (sign === 0) this.addShare(part, k, combination, sense, this.changing[this.changes++]!.fill(0));
+      else if (sign === 0) this.addShare(part, k, combination, sense, this.nextChanging());
     }
+  }
+
+  private nextChanging(): Float64Array {
+    const share = this.changing[this.changes] ?? new Float64Array(WIDTH);
+    this.changing[this.changes++] = share;
+    return share.fill(0);
   }
 
   /** Adds the changing shares that are adverse at t. */
@@ -109,12 +118,18 @@ export class PieceMaximum {
   value = 0;
   t = 0;
   private readonly envelope: PieceEnvelope;
-  private readonly roots = new UnitRoots();
   private readonly slope = new Float64Array(WIDTH);
-  private readonly degree: number;
+  private degree = 0;
 
-  constructor(curves: Curves, cases: Cases, nothing: number) {
-    this.envelope = new PieceEnvelope(curves, cases, nothing);
+  constructor(
+    cases: Cases,
+    private readonly roots: UnitRoots,
+  ) {
+    this.envelope = new PieceEnvelope(cases, roots);
+  }
+
+  take(curves: Curves, nothing: number): void {
+    this.envelope.take(curves, nothing);
     this.degree = curves.degree;
   }
 

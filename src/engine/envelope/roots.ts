@@ -1,5 +1,7 @@
 const STEPS = 200; // bisection alone needs 60; Newton's steps are extra and seldom more than five
 const DEGREE = 5;
+/** Coefficients of a polynomial of the highest degree. */
+export const WIDTH: number = DEGREE + 1;
 
 /**
  * Roots in the open interval (0, 1) of polynomials up to the fifth degree, into buffers that are kept, since an
@@ -8,10 +10,10 @@ const DEGREE = 5;
  */
 export class UnitRoots {
   /** The roots found last, ascending. */
-  roots: Float64Array = new Float64Array(DEGREE + 1);
-  private readonly buffers = Array.from({ length: DEGREE + 1 }, () => ({
-    coefficients: new Float64Array(DEGREE + 1),
-    roots: new Float64Array(DEGREE + 1),
+  roots: Float64Array = new Float64Array(WIDTH);
+  private readonly buffers = Array.from({ length: WIDTH }, () => ({
+    coefficients: new Float64Array(WIDTH),
+    roots: new Float64Array(WIDTH),
   }));
 
   /** How many roots Σ a[j]·tʲ has there; 0 where it is zero throughout. */
@@ -54,11 +56,14 @@ export class UnitRoots {
   /** Without the difference of like numbers: one root from q = −(b ± √(b² − 4ac))/2, the other from c/q. */
   private solveQuadratic(): number {
     const { coefficients, roots } = this.buffers[2]!;
-    const [c, b, a] = [coefficients[0]!, coefficients[1]!, coefficients[2]!];
+    const c = coefficients[0]!;
+    const b = coefficients[1]!;
+    const a = coefficients[2]!;
     const discriminant = b * b - 4 * a * c;
     if (!(discriminant >= 0)) return 0;
     const q = -(b + (b < 0 ? -1 : 1) * Math.sqrt(discriminant)) / 2;
-    const [one, other] = [q / a, c / q];
+    const one = q / a;
+    const other = c / q;
     const count = keep(roots, 0, Math.min(one, other));
     return one === other ? count : keep(roots, count, Math.max(one, other));
   }

@@ -3,7 +3,7 @@ import { stillBeam } from '../combination/index';
 import type { Beam, Fault, Reading } from '../model/index';
 import { arrangementLoads, governingArrangements, type LoadArrangement } from './arrangement';
 import { ContactBeam, type Resting } from './contact';
-import { groupReactions } from './reactions';
+import { SourceReactions } from './reactions';
 import type { EnvelopeTask } from './read';
 import { restingEnvelope } from './resting';
 import type { Source } from './sources';
@@ -40,7 +40,7 @@ export function solveEnvelope(task: EnvelopeTask, positions: readonly number[]):
     return { ok: true, value: { envelope, solved, governing, arrangements } };
   }
   const contact = new ContactBeam(beam, liftOff, redundants);
-  const found = restingEnvelope(task, contact, positions, groupReactions(sources, elementary));
+  const found = restingEnvelope(task, contact, positions, new SourceReactions(sources, elementary).groups);
   if (!found.ok) return { ok: false, faults: [liftOffFault(task, found)] };
   const { envelope } = found;
   const governing = governingArrangements(task, envelope);

@@ -50,6 +50,10 @@ const A500_DESIGN_WALL = 0.93; // AISC 360-16 B4.2: tubes to A500 are rolled to 
 export const designWall = (nominal: number, standard: TubeStandard): number =>
   standard === 'ASTM A500' ? A500_DESIGN_WALL * nominal : nominal;
 
+/** The wall that a design wall was made from. */
+export const nominalWall = (design: number, standard: TubeStandard): number =>
+  standard === 'ASTM A500' ? design / A500_DESIGN_WALL : design;
+
 /**
  * Corner radii for calculation. EN 10210-2:2006 Annex B: 1.5 t and 1.0 t. EN 10219-2:2006 Annex B: 2.0, 2.5, 3.0 t
  * outside up to 6, up to 10 and over 10 mm, and t less inside. ASTM A500: 2.0 t outside, as the AISC tables.

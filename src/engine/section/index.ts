@@ -14,8 +14,8 @@ export {
   tube,
   widthOf,
 } from './dimensions';
-export { elasticStrength, MATERIALS, materialFor, yieldStrength } from './material';
-export { MaterialListFault, readMaterials } from './material-list';
+export { elasticStrength, MATERIALS, materialFor, materialIn, yieldStrength } from './material';
+export { type MaterialEntry, type MaterialSet, materialsOf } from './material-set';
 export type { Material } from './material-types';
 export { outlineCorners, outlinePath, roundCorners } from './outline';
 export {

@@ -1,29 +1,5 @@
 import { describe, expect, test } from 'vitest';
-import {
-  elasticStrength,
-  MATERIALS,
-  type Material,
-  MaterialListFault,
-  materialFor,
-  readMaterials,
-  yieldStrength,
-} from './index';
-
-const EXAMPLE = {
-  id: 'x',
-  name: 'X',
-  kind: 'steel',
-  standard: 'S',
-  edition: '1',
-  clause: '1',
-  from_memory: true,
-  note: 'n',
-  e: '210 GPa',
-  g: '81 GPa',
-  density: '7850 kg/m3',
-  expansion: '12e-6 1/K',
-  strength: [{ fy: '355 MPa', fu: '470 MPa' }],
-};
+import { elasticStrength, MATERIALS, type Material, materialFor, materialIn, yieldStrength } from './index';
 
 function material(id: string): Material {
   const found = materialFor(id);
@@ -74,31 +50,8 @@ describe('the shipped materials', () => {
 
   test('an unknown id is undefined', () => {
     expect(materialFor('unobtainium')).toBeUndefined();
+    expect(materialIn([], 's355')).toBeUndefined();
   });
-});
-
-test('a list with a bare number is refused with the material and the field', () => {
-  const list = { materials: [{ ...EXAMPLE, e: '210000' }] };
-  expect(() => readMaterials(list)).toThrow(MaterialListFault);
-  expect(() => readMaterials(list)).toThrow('material x, e: "210000" has no unit.');
-  expect(() => readMaterials({ materials: [{ ...EXAMPLE, kind: 'glass' }] })).toThrow('kind');
-  expect(readMaterials({ materials: [EXAMPLE] })[0]?.e).toBe(2.1e11);
-});
-
-test.each<[string, unknown, string]>([
-  ['no list at all', null, 'material (list), materials: is no list'],
-  ['a list under no name', [EXAMPLE], 'material (list), materials: is no list'],
-  ['no id', { materials: [{ ...EXAMPLE, id: undefined }] }, 'material (no id), id: is no text'],
-  ['an empty name', { materials: [{ ...EXAMPLE, name: '' }] }, 'material x, name: is no text'],
-  ['no bands', { materials: [{ ...EXAMPLE, strength: [] }] }, 'material x, strength: is no list'],
-  [
-    'bands that are none',
-    { materials: [{ ...EXAMPLE, strength: '355 MPa' }] },
-    'material x, strength: is no list',
-  ],
-])('%s is refused with its place', (_name, list, message) => {
-  expect(() => readMaterials(list)).toThrow(MaterialListFault);
-  expect(() => readMaterials(list)).toThrow(message);
 });
 
 test('NDS timber gives its reference design values', () => {

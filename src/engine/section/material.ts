@@ -1,12 +1,30 @@
-import document from '../../../data/materials/materials.json';
-import { readMaterials } from './material-list';
+import astm from '../../../data/materials/astm-steel.json';
+import en338 from '../../../data/materials/en-338-2016.json';
+import en10025 from '../../../data/materials/en-10025-2004.json';
+import en10210 from '../../../data/materials/en-10210-2006.json';
+import en14080 from '../../../data/materials/en-14080-2013.json';
+import nds from '../../../data/materials/nds-2018.json';
+import { type MaterialSet, materialsOf } from './material-set';
 import type { Material } from './material-types';
 
-/** The shipped materials, in the order in which they are offered. */
-export const MATERIALS: readonly Material[] = readMaterials(document);
+/**
+ * The shipped materials, in the order in which they are offered: for whoever pins no set, such as a template's page. A
+ * member reads its own from the set that it pins.
+ */
+export const MATERIALS: readonly Material[] = [en10025, en10210, astm, en338, en14080, nds].flatMap((set) =>
+  materialsOf(set as MaterialSet),
+);
 
-export const materialFor = (id: string): Material | undefined =>
-  MATERIALS.find((material) => material.id === id.trim().toLowerCase());
+const isNamed = (id: string) => {
+  const wanted = id.trim().toLowerCase();
+  return (material: Material) => material.id === wanted;
+};
+
+/** A material by its id, however typed. */
+export const materialIn = (materials: readonly Material[], id: string): Material | undefined =>
+  materials.find(isNamed(id));
+
+export const materialFor = (id: string): Material | undefined => materialIn(MATERIALS, id);
 
 /**
  * Yield strength of steel of a thickness, Pa: the band whose limit it does not exceed (EN 10025; a 20 mm flange of S355

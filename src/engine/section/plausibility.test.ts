@@ -93,7 +93,7 @@ test('moduli that fit each other badly are a warning', () => {
   const { iMajor, wElMajor } = sectionProperties(d);
   const found = plausibilityFindings(d, { iMajor, wElMajor, wPlMajor: 1.4 * wElMajor }, OPTIONS);
   expect(found.filter(({ rule }) => rule === 'shape_factor')).toMatchObject([
-    { severity: 'warning', property: 'wPlMajor', formula: 'W_pl/W_el is 1.40; usual is 1.08 to 1.30' },
+    { severity: 'warning', property: 'wPlMajor', formula: 'W_pl/W_el is 1.40; usual is 1.10 to 1.30' },
   ]);
 });
 

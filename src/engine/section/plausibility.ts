@@ -1,5 +1,13 @@
-import { depthOf, type SectionDimensions, widthOf } from './dimensions';
-import { sectionProperties } from './properties';
+import {
+  cornerRadii,
+  depthOf,
+  dimensionFaults,
+  nominalWall,
+  type SectionDimensions,
+  type TubeStandard,
+  widthOf,
+} from './dimensions';
+import { type SectionProperties, sectionProperties } from './properties';
 import { slipCause } from './slip';
 
 /** What a table can say of a section, SI: kg/m, m², m³, m⁴, m⁶. */
@@ -40,6 +48,12 @@ export type PlausibilityOptions = {
   rounding?: Tabulated;
   /** Without root radii a tabulated area may lie up to 7 % above the computed one. */
   rootRadiusKnown: boolean;
+  /** Flanges whose thickness is a mean: the second moments may differ by twice as much. */
+  taperedFlanges?: boolean;
+  /** Of a tube: masses to ASTM A500 are those of the nominal wall, areas those of the design wall. */
+  tubeStandard?: TubeStandard;
+  /** Properties of the dimensions, where the caller has them. */
+  computed?: SectionProperties;
 };
 
 type Limits = { warning: number; error: number; above?: number };
@@ -47,18 +61,22 @@ type Limits = { warning: number; error: number; above?: number };
 const AREA: Limits = { warning: 0.01, error: 0.08 };
 const I_MAJOR: Limits = { warning: 0.015, error: 0.05 };
 const I_MINOR: Limits = { warning: 0.02, error: 0.06 };
+const TAPERED: Limits = { warning: 0.03, error: 0.06 };
 const MASS: Limits = { warning: 0.015, error: 0.05 };
 const ELASTIC: Limits = { warning: 0.01, error: 0.03 };
-const PLASTIC: Limits = { warning: 0.015, error: 0.05 };
+const PLASTIC: Limits = { warning: 0.015, error: Number.POSITIVE_INFINITY };
 const GYRATION: Limits = { warning: 0.01, error: 0.03 };
 const TIMBER_I: Limits = { warning: 0.002, error: 0.002 };
 const WARPING: Limits = { warning: 0.03, error: Number.POSITIVE_INFINITY };
+const CHANNEL_WARPING: Limits = { warning: 0.12, error: Number.POSITIVE_INFINITY };
+const A500_MASS = 1.07;
+const A500_MASS_LIMITS: Limits = { warning: 0.025, error: 0.05 };
 const TUBE_TORSION: Limits = { warning: 0.08, error: Number.POSITIVE_INFINITY };
 const WITHOUT_ROOTS = 0.07; // fillets are left out of the computed value
 
-/** Plastic over elastic modulus about the major axis, by shape. */
+/** Plastic over elastic modulus about the major axis, by shape. Thick walls approach the solid section. */
 const SHAPE_FACTORS: Readonly<Record<SectionDimensions['shape'], readonly [number, number]>> = {
-  i: [1.08, 1.3],
+  i: [1.1, 1.3],
   channel: [1.15, 1.25],
   rhs: [1.13, 1.4],
   shs: [1.13, 1.4],
@@ -66,6 +84,8 @@ const SHAPE_FACTORS: Readonly<Record<SectionDimensions['shape'], readonly [numbe
   rectangle: [1.4925, 1.5075],
   round: [1.69, 1.706],
 };
+/** The same about the minor axis of an I: two flanges and what the web and the roots add or take. */
+const MINOR_SHAPE_FACTOR = [1.5, 1.62] as const;
 
 /** Compares tabulated values with each other and with what the dimensions give, one rule at a time. */
 class Comparison {
@@ -112,13 +132,12 @@ const EXCHANGED = 0.1; // both axes fit the other one's value: no slip of units 
  */
 function checkAxes(
   comparison: Comparison,
-  d: SectionDimensions,
   computed: { iMajor: number; iMinor: number },
   allowed: number,
 ): boolean {
   const major = comparison.get('iMajor');
   const minor = comparison.get('iMinor');
-  if (major === undefined || minor === undefined || major >= minor || depthOf(d) <= widthOf(d)) return true;
+  if (major === undefined || minor === undefined || major >= minor) return true;
   const agree = (limit: number, forMajor: number, forMinor: number) =>
     Math.abs(major / forMajor - 1) <= limit && Math.abs(minor / forMinor - 1) <= limit;
   if (agree(allowed, computed.iMajor, computed.iMinor)) return true;
@@ -127,51 +146,144 @@ function checkAxes(
   return false;
 }
 
-function checkModuli(comparison: Comparison, d: SectionDimensions, elastic: number): void {
-  const wEl = comparison.get('wElMajor');
-  const wPl = comparison.get('wPlMajor');
-  if (wEl !== undefined && wPl !== undefined && wPl < wEl) {
-    comparison.report(
-      'plastic_below_elastic',
-      'error',
-      'wPlMajor',
-      'W_pl is below W_el',
-      'The elastic and the plastic column look exchanged',
-    );
-    return;
-  }
-  const isElasticRight = comparison.check('elastic_modulus', 'wElMajor', elastic, 'W_el = I/(h/2)', ELASTIC);
-  if (!isElasticRight || wEl === undefined || wPl === undefined) return;
-  const [least, most] = SHAPE_FACTORS[d.shape];
-  const factor = wPl / wEl;
-  if (factor < least || factor > most) {
-    comparison.report(
-      'shape_factor',
-      'warning',
-      'wPlMajor',
-      `W_pl/W_el is ${factor.toFixed(2)}; usual is ${least.toFixed(2)} to ${most.toFixed(2)}`,
-    );
+/** False where elastic and plastic modulus of the axis look exchanged. */
+function checkOrder(comparison: Comparison, axis: 'Major' | 'Minor'): boolean {
+  const wEl = comparison.get(`wEl${axis}`);
+  const wPl = comparison.get(`wPl${axis}`);
+  if (wEl === undefined || wPl === undefined || wPl >= wEl) return true;
+  const cause = 'The elastic and the plastic column look exchanged';
+  comparison.report('plastic_below_elastic', 'error', `wPl${axis}`, 'W_pl is below W_el', cause);
+  return false;
+}
+
+/** Shape factor against its usual range; where it is within, W_pl against the dimensions. */
+function checkPlastic(
+  comparison: Comparison,
+  axis: 'Major' | 'Minor',
+  computed: SectionProperties,
+  range: readonly [number, number] | null,
+  limits: Limits,
+): void {
+  const property = `wPl${axis}` as const;
+  const wEl = comparison.get(`wEl${axis}`);
+  const wPl = comparison.get(property);
+  if (wPl === undefined) return;
+  const factor = wPl / (wEl ?? computed[`wEl${axis}`]);
+  const [least, most] = range ?? [0, Number.POSITIVE_INFINITY];
+  const isUsual = factor >= least && factor <= most;
+  const isElasticRight = wEl !== undefined && Math.abs(wEl / computed[`wEl${axis}`] - 1) <= ELASTIC.error;
+  if (isUsual || !isElasticRight || slipCause(wPl / computed[property], TABULATED[property].power) !== null) {
+    comparison.check('plastic_modulus', property, computed[property], 'W_pl from the dimensions', limits);
+  } else if (Math.abs(wPl / computed[property] - 1) > limits.warning + (limits.above ?? 0)) {
+    const rule = axis === 'Major' ? 'shape_factor' : 'shape_factor_minor';
+    const formula = `W_pl/W_el is ${factor.toFixed(2)}; usual is ${least.toFixed(2)} to ${most.toFixed(2)}`;
+    const expected = computed[property];
+    comparison.findings.push({ rule, severity: 'warning', property, expected, formula, cause: null });
   }
 }
+
+/** Rolled shapes: between the strips alone and 1.6 times them, which roots and junctions add. */
+const STRIPS_LEAST = 1;
+const STRIPS_MOST = 1.6;
 
 function checkTorsion(comparison: Comparison, d: SectionDimensions, j: number): void {
   const value = comparison.get('j');
   if (value === undefined) return;
   if (d.shape === 'rhs' || d.shape === 'shs' || d.shape === 'chs') {
     comparison.check('torsion', 'j', j, 'I_t = 4 A² t/p + p t³/3', TUBE_TORSION);
-  } else if (d.shape === 'i') {
+  } else if (d.shape === 'i' || d.shape === 'channel') {
     const strips = (2 * d.b * d.tf ** 3 + (d.h - 2 * d.tf) * d.tw ** 3) / 3;
-    if (value < 0.97 * strips || value > 1.8 * strips) {
-      const cause = slipCause(value / j, TABULATED.j.power);
+    const [least, most] = [STRIPS_LEAST * strips, STRIPS_MOST * strips];
+    if (value >= Math.min(least, 0.95 * j) && value <= Math.max(most, 1.05 * j)) return;
+    const cause = slipCause(value / j, TABULATED.j.power);
+    const severity = cause === null ? 'warning' : 'error';
+    const formula = 'I_t from 1 to 1.6 times Σ b t³/3';
+    comparison.findings.push({ rule: 'torsion', severity, property: 'j', expected: j, formula, cause });
+  } else {
+    comparison.check('torsion', 'j', j, 'I_t of the solid section', TUBE_TORSION);
+  }
+}
+
+function checkWarping(comparison: Comparison, d: SectionDimensions, iMinor: number, computed: number): void {
+  const value = comparison.get('iw');
+  if (value === undefined) return;
+  if (d.shape === 'i') {
+    const expected = (iMinor * (d.h - d.tf) ** 2) / 4;
+    comparison.check('warping', 'iw', expected, 'I_w = I minor (h − t_f)²/4', WARPING);
+  } else if (d.shape === 'channel') {
+    comparison.check('warping', 'iw', computed, 'I_w of the mid-lines of the channel', CHANNEL_WARPING);
+  } else if (value > 0) {
+    const formula = 'I_w of a closed or solid section is 0';
+    comparison.findings.push({
+      rule: 'warping',
+      severity: 'warning',
+      property: 'iw',
+      expected: 0,
+      formula,
+      cause: null,
+    });
+  }
+}
+
+const NOMINAL_OVER_DESIGN = [1.05, 1.09] as const; // mass over ρA of a tube to ASTM A500
+const SAME = 0.01;
+
+/** A tube to ASTM A500: its mass is that of the nominal wall, its area that of the design wall. */
+function checkDesignWall(
+  comparison: Comparison,
+  d: SectionDimensions & { t: number },
+  computed: SectionProperties,
+  density: number,
+): boolean {
+  const area = comparison.get('area');
+  const mass = comparison.get('mass');
+  if (area !== undefined && Math.abs(area / computed.area - 1) > SAME) {
+    const t = nominalWall(d.t, 'ASTM A500');
+    const nominal = d.shape === 'chs' ? { ...d, t } : { ...d, t, ...cornerRadii(t, 'ASTM A500') };
+    const isPossible = dimensionFaults(nominal).length === 0;
+    if (isPossible && Math.abs(area / sectionProperties(nominal).area - 1) <= SAME) {
+      const cause = 'The properties look computed with the nominal wall, not with 0.93 of it';
+      const formula = 'A with the design wall of 0.93 t';
+      const rule = 'nominal_wall';
       comparison.findings.push({
-        rule: 'torsion',
-        severity: cause === null ? 'warning' : 'error',
-        property: 'j',
-        expected: j,
-        formula: 'I_t from the dimensions',
+        rule,
+        severity: 'warning',
+        property: 'area',
+        expected: computed.area,
+        formula,
         cause,
       });
+      return false;
     }
+  }
+  if (mass === undefined) return true;
+  const ratio = mass / (density * computed.area);
+  const [least, most] = NOMINAL_OVER_DESIGN;
+  if (ratio >= least && ratio <= most) return true;
+  if (Math.abs(ratio - 1) <= SAME) {
+    const formula = `m/(ρA) is ${ratio.toFixed(2)}; 1.05 to 1.09 where A is of the design wall`;
+    const cause = 'The mass looks like that of the design wall';
+    comparison.report('nominal_wall', 'warning', 'mass', formula, cause);
+    return true;
+  }
+  const expected = density * computed.area * A500_MASS;
+  comparison.check('mass', 'mass', expected, `m = ${density} kg/m³ · A · 1.07`, A500_MASS_LIMITS);
+  return true;
+}
+
+const THIN_FLANGE = 0.8; // of the web
+const SLENDER = [0.9, 4.5] as const; // depth over width of an I
+
+function checkProportions(comparison: Comparison, d: SectionDimensions): void {
+  if (d.shape !== 'i') return;
+  const ratio = d.h / d.b;
+  if (d.tf < THIN_FLANGE * d.tw) {
+    const formula = `t_f/t_w is ${(d.tf / d.tw).toFixed(2)}; usual is 0.80 or more`;
+    comparison.report('proportions', 'warning', 'area', formula, 'Flange and web look exchanged');
+  }
+  if (ratio < SLENDER[0] || ratio > SLENDER[1]) {
+    const formula = `h/b is ${ratio.toFixed(2)}; usual is 0.90 to 4.50`;
+    comparison.report('proportions', 'warning', 'area', formula, 'Look at the depth and the width');
   }
 }
 
@@ -184,54 +296,58 @@ export function plausibilityFindings(
   tabulated: Tabulated,
   options: PlausibilityOptions,
 ): Finding[] {
-  const computed = sectionProperties(d);
+  const computed = options.computed ?? sectionProperties(d);
   const comparison = new Comparison(tabulated, options.rounding ?? {});
   const above = options.rootRadiusKnown ? 0 : WITHOUT_ROOTS;
   const pick = (name: 'area' | 'iMajor' | 'iMinor', isRight: boolean) =>
     (isRight ? comparison.get(name) : undefined) ?? computed[name];
 
-  const isAreaRight = comparison.check('area', 'area', computed.area, 'A from the dimensions', {
-    ...AREA,
-    above,
-  });
+  const isDesignWall = options.tubeStandard === 'ASTM A500' && 't' in d;
+  if (isDesignWall && !checkDesignWall(comparison, d, computed, options.density)) return comparison.findings;
+  const fromSizes = 'A from the dimensions';
+  const isAreaRight = comparison.check('area', 'area', computed.area, fromSizes, { ...AREA, above });
   const area = pick('area', isAreaRight);
-  comparison.check('mass', 'mass', options.density * area, `m = ${options.density} kg/m³ · A`, MASS);
-
-  const isTimber = d.shape === 'rectangle';
-  const majorLimits = isTimber ? TIMBER_I : { ...I_MAJOR, above };
-  const minorLimits = isTimber ? TIMBER_I : { ...I_MINOR, above };
-  const areAxesRight = checkAxes(comparison, d, computed, majorLimits.warning);
-  const isMajorRight =
-    areAxesRight &&
-    comparison.check('second_moment', 'iMajor', computed.iMajor, 'I from the dimensions', majorLimits);
-  const isMinorRight =
-    areAxesRight &&
-    comparison.check('second_moment', 'iMinor', computed.iMinor, 'I from the dimensions', minorLimits);
-  const iMajor = pick('iMajor', isMajorRight);
-  const iMinor = pick('iMinor', isMinorRight);
-
-  checkModuli(comparison, d, iMajor / (depthOf(d) / 2));
-  const isExchanged = comparison.findings.some(({ rule }) => rule === 'plastic_below_elastic');
-  if (!isExchanged) {
-    comparison.check('plastic_modulus', 'wPlMajor', computed.wPlMajor, 'W_pl from the dimensions', {
-      ...PLASTIC,
-      above,
-    });
+  if (!isDesignWall) {
+    comparison.check('mass', 'mass', options.density * area, `m = ${options.density} kg/m³ · A`, MASS);
   }
-  if (d.shape !== 'channel') {
-    comparison.check('elastic_modulus', 'wElMinor', iMinor / (widthOf(d) / 2), 'W_el = I/(b/2)', ELASTIC);
+  const { iMajor, iMinor, areAxesRight } = checkSecondMoments(comparison, d, computed, options, pick);
+  const isMajorOrdered = checkOrder(comparison, 'Major');
+  const isMinorOrdered = checkOrder(comparison, 'Minor');
+  const limits = { ...PLASTIC, warning: options.taperedFlanges ? TAPERED.warning : PLASTIC.warning, above };
+  if (isMajorOrdered) {
+    comparison.check('elastic_modulus', 'wElMajor', iMajor / (depthOf(d) / 2), 'W_el = I/(h/2)', ELASTIC);
+    checkPlastic(comparison, 'Major', computed, SHAPE_FACTORS[d.shape], limits);
+  }
+  if (isMinorOrdered) {
+    const farthest = Math.max(computed.centroid, widthOf(d) - computed.centroid);
+    comparison.check('elastic_modulus', 'wElMinor', iMinor / farthest, 'W_el = I/c', ELASTIC);
+    checkPlastic(comparison, 'Minor', computed, d.shape === 'i' ? MINOR_SHAPE_FACTOR : null, limits);
   }
   comparison.check('gyration', 'rMajor', Math.sqrt(iMajor / area), 'i = √(I/A)', GYRATION);
   comparison.check('gyration', 'rMinor', Math.sqrt(iMinor / area), 'i = √(I/A)', GYRATION);
   checkTorsion(comparison, d, computed.j);
-  if (d.shape === 'i' && areAxesRight) {
-    comparison.check(
-      'warping',
-      'iw',
-      (iMinor * (d.h - d.tf) ** 2) / 4,
-      'I_w = I minor (h − t_f)²/4',
-      WARPING,
-    );
-  }
+  if (areAxesRight) checkWarping(comparison, d, iMinor, computed.iw);
+  checkProportions(comparison, d);
   return comparison.findings;
+}
+
+/** Both second moments, each as tabulated where it is plausible, else as computed. */
+function checkSecondMoments(
+  comparison: Comparison,
+  d: SectionDimensions,
+  computed: SectionProperties,
+  { rootRadiusKnown, taperedFlanges = false }: PlausibilityOptions,
+  pick: (name: 'iMajor' | 'iMinor', isRight: boolean) => number,
+) {
+  const above = rootRadiusKnown ? 0 : WITHOUT_ROOTS;
+  const limitsOf = (rolled: Limits) =>
+    d.shape === 'rectangle' ? TIMBER_I : { ...(taperedFlanges ? TAPERED : rolled), above };
+  const major = limitsOf(I_MAJOR);
+  const areAxesRight = checkAxes(comparison, computed, major.warning);
+  const check = (property: 'iMajor' | 'iMinor', limits: Limits) =>
+    areAxesRight &&
+    comparison.check('second_moment', property, computed[property], 'I from the dimensions', limits);
+  const iMajor = pick('iMajor', check('iMajor', major));
+  const iMinor = pick('iMinor', check('iMinor', limitsOf(I_MINOR)));
+  return { iMajor, iMinor, areAxesRight };
 }

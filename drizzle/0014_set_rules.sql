@@ -28,4 +28,5 @@ GRANT EXECUTE ON FUNCTION uses_of_revision(uuid), members_by_id(uuid[]) TO putlo
 GRANT CREATE ON SCHEMA public TO putlog_lookup;--> statement-breakpoint
 ALTER FUNCTION uses_of_revision(uuid) OWNER TO putlog_lookup;--> statement-breakpoint
 ALTER FUNCTION members_by_id(uuid[]) OWNER TO putlog_lookup;--> statement-breakpoint
-REVOKE CREATE ON SCHEMA public FROM putlog_lookup;
+REVOKE CREATE ON SCHEMA public FROM putlog_lookup;--> statement-breakpoint
+GRANT UPDATE (material_revision_id, combination_revision_id) ON member TO putlog_web;

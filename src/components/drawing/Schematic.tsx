@@ -2,8 +2,7 @@ import { useMemo } from 'react';
 import type { Piecewise } from '@/engine/polynomial/index';
 import { valueAt } from './geometry/curve';
 import { type NamedLength, packed } from './geometry/dimensions';
-import { Dimension } from './marks/Dimension';
-import { Rich } from './marks/Rich';
+import { NamedLengths } from './schematic/NamedLengths';
 import { SchematicFrame, SchematicMember, spread } from './schematic/SchematicFrame';
 import { SchematicLoads } from './schematic/SchematicLoads';
 import { type SchematicMark, SchematicMarks } from './schematic/SchematicMarks';
@@ -59,25 +58,6 @@ const SIZES = {
   },
 } as const;
 
-type RowsProps = { rows: NamedLength[][]; toX: (metres: number) => number; base: number };
-
-function NamedLengths({ rows, toX, base }: RowsProps) {
-  return rows.flatMap((row, i) => {
-    const y = base + 42 + i * 19;
-    return row.map(({ symbol, from, to }) => {
-      const [x1, x2] = [toX(from), toX(to)];
-      return (
-        <g key={`${symbol} ${from}`}>
-          <Dimension y={y} from={y - 10} xs={[x1, x2]} pairs={[[x1, x2]]} />
-          <text x={(x1 + x2) / 2} y={y - 5} textAnchor="middle" className="figure">
-            <Rich text={symbol} />
-          </text>
-        </g>
-      );
-    });
-  });
-}
-
 /** A small drawing of a beam: supports and loads on one heavy line, and a diagram or deflected shape over it. */
 export function Schematic(props: SchematicProps) {
   const { beam, moment, deflected, mark, loadNames, lengths, momentSide: side = 'tension' } = props;
@@ -111,7 +91,7 @@ export function Schematic(props: SchematicProps) {
         names={loadNames}
       />
       {mark && <SchematicMarks mark={mark} toX={toX} base={base} width={width} deflectedAt={deflectedAt} />}
-      <NamedLengths rows={rows} toX={toX} base={base} />
+      <NamedLengths rows={rows} toX={toX} from={base + 32} />
     </SchematicFrame>
   );
 }

@@ -28,7 +28,7 @@ export interface Added {
 }
 
 /** Adds with `add`, then brings up the redundants and what the draft says of itself. */
-function adding(before: Written, add: (steps: DraftSteps) => Pointer): Added {
+export function adding(before: Written, add: (steps: DraftSteps) => Pointer): Added {
   const steps = new DraftSteps(before);
   const select = add(steps);
   rechoose(steps, before);
@@ -51,7 +51,7 @@ function rechoose(steps: DraftSteps, before: Written): void {
     steps.set('/beam/redundants', now.usual);
 }
 
-function parameter(steps: DraftSteps, symbol: string, what: NewParameter): string {
+export function parameter(steps: DraftSteps, symbol: string, what: NewParameter): string {
   const name = steps.fresh(symbol);
   steps.append('/parameters', quantity(name, what));
   return name;
@@ -233,7 +233,7 @@ export function addSettlement(document: Written): Added {
 }
 
 /** With what does not follow from loads alone, the stiffness changes every result. */
-function affectAll(steps: DraftSteps): void {
+export function affectAll(steps: DraftSteps): void {
   steps.set('/stiffness/affects', ['reactions', 'shear', 'moment', 'slope', 'deflection']);
 }
 

@@ -23,7 +23,7 @@ export function releasable(document: Written): Releasable | null {
   const reading = readBeam(rest);
   if (!reading.ok) return null;
   const beam = reading.value;
-  const write = (one: Redundant) => written(sketch, beam, one) ?? [];
+  const write = (one: Redundant) => writtenRedundant(sketch, beam, one) ?? [];
   return {
     degree: beam.degree,
     eligible: eligibleRedundants(beam).flatMap(write),
@@ -32,7 +32,7 @@ export function releasable(document: Written): Releasable | null {
 }
 
 /** By the letter or the expression of its support; null for a place that has no support. */
-function written(sketch: Sketch, beam: Beam, one: Redundant): WrittenRedundant | null {
+export function writtenRedundant(sketch: Sketch, beam: Beam, one: Redundant): WrittenRedundant | null {
   const { instance, template } = sketch;
   if (one.component !== 'moment') {
     const support = instance.letters[one.support];

@@ -3,21 +3,14 @@ import { type SupportKind, supportLetter } from '@/engine/model';
 import { toUnit } from '@/engine/quantity';
 import { limitsOf, type Template, unitOf } from '@/engine/template';
 import type { Written } from '@/features/review/draft';
-import {
-  applyEdits,
-  type Edit,
-  keysOf,
-  listAt,
-  type Pointer,
-  type StatedValues,
-  textAt,
-  valueAt,
-} from '../edit';
-import { resolved, type Target } from './add';
+import { affectAll, parameter } from '../add';
+import type { DraftSteps } from '../draft-steps';
+import { type Edit, keysOf, listAt, type Pointer, type StatedValues, textAt, valueAt } from '../edit';
+import { type NewParameter, SETTLEMENT } from '../entries';
+import { isNew, placed, ruleOf, SPRING, type Target } from './add';
 import { mentionsOf, relettered } from './letters';
 import { linearOf } from './linear';
-import { newParameter } from './parameters';
-import { withReleases } from './releases';
+import { changing } from './releases';
 import type { Sketch } from './sketch';
 
 const isSupport = (pointer: Pointer): boolean => /^\/beam\/supports\/\d+$/.test(pointer);
@@ -33,63 +26,55 @@ export function whyKept(document: Written, pointer: Pointer): string | undefined
 }
 
 /** Takes a part away, with the parameters that only it spoke of and, of a support, its release. */
-export function removal(document: Written, pointer: Pointer): Edit[] {
-  const own: Edit = { do: 'remove', at: pointer };
-  const spoken = new Set(JSON.stringify(valueAt(document, pointer))?.match(/[A-Za-z][A-Za-z0-9]*/g));
-  const left = applyEdits(document, [own]).document;
-  const idle = idleParameters(left, spoken);
-  if (!isSupport(pointer)) return withReleases(document, [own, ...idle]);
-  const index = indexOf(pointer);
-  const count = listAt(document, '/beam/supports').length;
-  const released: Edit[] = listAt(document, '/beam/redundants')
-    .flatMap((one, k) => (textAt(one, '/support') === supportLetter(index) ? [k] : []))
-    .reverse()
-    .map((k) => ({ do: 'remove', at: `/beam/redundants/${k}` }));
-  const bare = applyEdits(document, released).document;
+export const removal = (document: Written, pointer: Pointer): Edit[] =>
+  changing(document, (steps) => {
+    const spoken = wordsOf(valueAt(document, pointer));
+    if (isSupport(pointer)) releaseNoMore(steps, indexOf(pointer));
+    steps.do({ do: 'remove', at: pointer });
+    dropIdle(steps, spoken);
+  });
+
+const wordsOf = (value: unknown): ReadonlySet<string> =>
+  new Set(JSON.stringify(value ?? '').match(/[A-Za-z][A-Za-z0-9]*/g));
+
+/** Before the support goes: its releases go, and those behind it move up a letter. */
+function releaseNoMore(steps: DraftSteps, index: number): void {
+  const letter = supportLetter(index);
+  removeWhere(steps, '/beam/redundants', '/support', letter);
+  const count = listAt(steps.document, '/beam/supports').length;
   const letters = new Map(
     Array.from({ length: count }, (_, k) => [supportLetter(k), supportLetter(k > index ? k - 1 : k)]),
   );
-  return withReleases(document, [...released, ...relettered(bare, letters), own, ...idle]);
+  for (const edit of relettered(steps.document, letters)) steps.do(edit);
 }
 
-/** Those of the symbols that nothing in the document speaks of any more, last first, each with its own rule and dimension. */
-function idleParameters(document: Written, symbols: ReadonlySet<string>): Edit[] {
-  const { beam, derived, rules, results, proof_cases } = document;
-  const ownRule = (symbol: string) => `${symbol.toLowerCase()}-within`;
-  return listAt(document, '/parameters')
-    .flatMap((one, index) => {
-      const symbol = textAt(one, '/symbol');
-      if (!symbols.has(symbol)) return [];
-      const others = {
-        ...Object(beam),
-        dimensions: listAt(beam, '/dimensions').filter((each) => textAt(each, '/symbol') !== symbol),
-      };
-      const said = JSON.stringify([
-        others,
-        derived,
-        listAt({ rules }, '/rules').filter((rule) => textAt(rule, '/id') !== ownRule(symbol)),
-        results,
-        proof_cases,
-      ]);
-      return new RegExp(`\\b${symbol}\\b`).test(said) ? [] : [{ symbol, index }];
-    })
-    .reverse()
-    .flatMap(({ symbol, index }): Edit[] => [
-      ...removedWhere(document, '/beam/dimensions', '/symbol', symbol),
-      ...removedWhere(document, '/rules', '/id', ownRule(symbol)),
-      { do: 'remove', at: `/parameters/${index}` },
-    ]);
+/** Parameters among these that nothing in the document speaks of any more, each with its own rule and dimension. */
+function dropIdle(steps: DraftSteps, symbols: ReadonlySet<string>): void {
+  for (const symbol of symbols) {
+    const index = listAt(steps.document, '/parameters').findIndex((one) => textAt(one, '/symbol') === symbol);
+    if (index < 0 || isSpokenOf(steps.document, symbol)) continue;
+    removeWhere(steps, '/beam/dimensions', '/symbol', symbol);
+    removeWhere(steps, '/rules', '/id', ruleOf(symbol));
+    steps.do({ do: 'remove', at: `/parameters/${index}` });
+  }
 }
 
-const removedWhere = (document: Written, list: Pointer, key: Pointer, text: string): Edit[] =>
-  listAt(document, list)
-    .flatMap((one, index) => (textAt(one, key) === text ? [index] : []))
-    .reverse()
-    .map((index) => ({ do: 'remove', at: `${list}/${index}` }));
+/** Whether anything but its own rule and dimension speaks of the symbol. */
+function isSpokenOf(document: Written, symbol: string): boolean {
+  const { beam, derived, results, proof_cases } = document;
+  const dimensions = listAt(beam, '/dimensions').filter((one) => textAt(one, '/symbol') !== symbol);
+  const rules = listAt(document, '/rules').filter((rule) => textAt(rule, '/id') !== ruleOf(symbol));
+  return wordsOf([{ ...Object(beam), dimensions }, derived, rules, results, proof_cases]).has(symbol);
+}
+
+function removeWhere(steps: DraftSteps, list: Pointer, key: Pointer, text: string): void {
+  for (const [index, one] of [...listAt(steps.document, list).entries()].reverse())
+    if (textAt(one, key) === text) steps.do({ do: 'remove', at: `${list}/${index}` });
+}
 
 export type PlaceKey = 'at' | 'from' | 'to';
 
-/** Puts a part, or one end of it, at a place. Supports keep their order from the left. */
+/** Puts a part, or one end of it, at a place. Supports keep their order from the left; none is put on another. */
 export function movedTo(
   document: Written,
   sketch: Sketch,
@@ -97,27 +82,26 @@ export function movedTo(
   key: PlaceKey,
   target: Target,
 ): Edit[] {
-  const { text, x, edits } = resolved(document, target);
-  const set: Edit = { do: 'set', at: `${pointer}/${key}`, value: text };
   const { supports, length } = sketch.instance.beam;
-  const count = listAt(document, '/beam/supports').length;
+  const isInOrder = isSupport(pointer) && supports.length === listAt(document, '/beam/supports').length;
   const index = indexOf(pointer);
-  if (!isSupport(pointer) || supports.length !== count) return withReleases(document, [...edits, set]);
-  const isTaken = supports.some(({ at }, k) => k !== index && Math.abs(at - x) < 1e-9 * length);
-  if (isTaken) return [];
-  const to = supports.filter(({ at }, k) => k !== index && at < x).length;
-  if (to === index) return withReleases(document, [...edits, set]);
-  const order = supports
+  const x = isNew(target) ? target.bay.from.x + target.offset : target.x;
+  if (isInOrder && supports.some(({ at }, k) => k !== index && Math.abs(at - x) < 1e-9 * length)) return [];
+  return changing(document, (steps) => {
+    steps.set(`${pointer}/${key}`, placed(steps, target).text);
+    if (isInOrder) reorder(steps, index, supports.filter(({ at }, k) => k !== index && at < x).length);
+  });
+}
+
+function reorder(steps: DraftSteps, from: number, to: number): void {
+  if (from === to) return;
+  const order = listAt(steps.document, '/beam/supports')
     .map((_, k) => k)
-    .toSpliced(index, 1)
-    .toSpliced(to, 0, index);
+    .toSpliced(from, 1)
+    .toSpliced(to, 0, from);
   const letters = new Map(order.map((before, after) => [supportLetter(before), supportLetter(after)]));
-  return withReleases(document, [
-    ...edits,
-    set,
-    ...relettered(document, letters),
-    { do: 'move', at: pointer, to },
-  ]);
+  for (const edit of relettered(steps.document, letters)) steps.do(edit);
+  steps.do({ do: 'move', at: `/beam/supports/${from}`, to });
 }
 
 export const SUPPORT_CHOICES = ['fixed', 'pin', 'roller', 'guided', 'free', 'spring', 'turning'] as const;
@@ -141,42 +125,48 @@ const KINDS: Readonly<Record<SupportChoice, SupportKind>> = {
   turning: 'pin',
 };
 
+const TURNING: NewParameter = {
+  name: 'Rotational stiffness',
+  help: 'Moment for one radian of turn of the support, calculated or tested.',
+  dimension: 'rotational_spring',
+  default: '6000 kNm/rad',
+  min: '1 kNm/rad',
+  max: '10000000 kNm/rad',
+  step: '100 kNm/rad',
+};
+
 /** Makes a support hold in another way; what it moves by goes on where the new kind still holds it. */
-export function supportEdits(document: Written, pointer: Pointer, choice: SupportChoice): Edit[] {
-  const { kv: _, kr: __, rotation, rise, ...support } = Object(valueAt(document, pointer));
-  const spring =
-    choice === 'spring' || choice === 'turning'
-      ? newParameter(document, choice === 'spring' ? 'spring' : 'turning')
-      : null;
-  const kind = KINDS[choice];
-  const turnsHeld = kind === 'fixed' || kind === 'guided' || choice === 'turning';
-  const liftHeld = kind !== 'guided' && choice !== 'free';
-  const value = {
-    ...support,
-    kind,
-    ...(spring && { [choice === 'spring' ? 'kv' : 'kr']: spring.symbol }),
-    ...(liftHeld && rise && { rise }),
-    ...(turnsHeld && rotation && { rotation }),
-  };
-  const edits: Edit[] = [...(spring ? [spring.edit] : []), { do: 'set', at: pointer, value }];
-  const spoken = new Set(
-    [valueAt(document, `${pointer}/kv`), valueAt(document, `${pointer}/kr`)].map((text) => String(text)),
-  );
-  const after = applyEdits(document, edits).document;
-  return withReleases(document, [...edits, ...idleParameters(after, spoken)]);
-}
+export const supportEdits = (document: Written, pointer: Pointer, choice: SupportChoice): Edit[] =>
+  changing(document, (steps) => {
+    const { kv, kr, rotation, rise, ...support } = Object(valueAt(document, pointer));
+    const kind = KINDS[choice];
+    const holdsTurning = kind === 'fixed' || kind === 'guided' || choice === 'turning';
+    const holdsLifting = kind !== 'guided' && choice !== 'free';
+    if (choice === 'spring' || choice === 'turning') affectAll(steps);
+    steps.set(pointer, {
+      ...support,
+      kind,
+      ...(choice === 'spring' && { kv: parameter(steps, 'k', SPRING) }),
+      ...(choice === 'turning' && { kr: parameter(steps, 'k', TURNING) }),
+      ...(holdsLifting && rise && { rise }),
+      ...(holdsTurning && rotation && { rotation }),
+    });
+    dropIdle(steps, wordsOf([kv, kr]));
+  });
 
 /** Lets a support settle by a parameter of its own, or not any more. */
-export function settlementEdits(document: Written, pointer: Pointer): Edit[] {
-  const rise = textAt(document, `${pointer}/rise`);
-  if (rise === '') {
-    const { symbol, edit } = newParameter(document, 'settlement');
-    return [edit, { do: 'set', at: `${pointer}/rise`, value: `-${symbol}` }];
-  }
-  const removed: Edit = { do: 'remove', at: `${pointer}/rise` };
-  const after = applyEdits(document, [removed]).document;
-  return [removed, ...idleParameters(after, new Set(rise.match(/[A-Za-z][A-Za-z0-9]*/g)))];
-}
+export const settlementEdits = (document: Written, pointer: Pointer): Edit[] =>
+  changing(document, (steps) => {
+    const rise = textAt(document, `${pointer}/rise`);
+    if (rise === '') {
+      affectAll(steps);
+      const name = `Settlement of ${supportLetter(indexOf(pointer))}`;
+      steps.set(`${pointer}/rise`, `-${parameter(steps, 's', { ...SETTLEMENT, name })}`);
+      return;
+    }
+    steps.do({ do: 'remove', at: `${pointer}/rise` });
+    dropIdle(steps, wordsOf(rise));
+  });
 
 export interface Handle {
   /** The length that moves the part when it is dragged. */

@@ -2,8 +2,10 @@ import fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
 import { checkRedundants } from '@/engine/model';
 import type { Written } from '@/features/review/draft';
+import { type Added, addOverhang, addSpan } from '../add';
 import { applyEdits, type Edit, listAt, textAt, valueAt } from '../edit';
-import { type Addition, addAt, addOver, extend, newPlaceAt, type PlaceTool, wholeOf } from './add';
+import { startDocument } from '../start';
+import { addAt, addOver, newPlaceAt, type PlaceTool, wholeOf } from './add';
 import {
   choiceOf,
   draggedTo,
@@ -30,49 +32,38 @@ const placeAt = (document: Written, text: string): Place => {
   if (!place) throw new Error(`${text} is a place`);
   return place;
 };
-const added = (document: Written, addition: Addition): Written => edited(document, addition.edits);
+const added = (document: Written, addition: Added): Written => edited(document, addition.edits);
 const put = (document: Written, tool: PlaceTool, at: string): Written =>
   added(document, addAt(document, sketched(document), tool, placeAt(document, at)));
 const texts = (document: Written, list: string, key = '/at'): string[] =>
   listAt(document, list).map((one) => textAt(one, key));
 
-const span = added({}, extend({}, 'span'));
-const twoSpans = added(span, extend(span, 'span'));
-const overhang = added(twoSpans, extend(twoSpans, 'overhang'));
+/** Two spans and an overhang, without its load. */
+const start = startDocument('Two spans', 'two-spans-overhang');
+const overhang = edited(start, removal(start, '/beam/loads/0'));
 
-describe('a beam made from nothing', () => {
-  test('has a support at each end of a span, and none at the tip of an overhang', () => {
-    expect(valueAt(overhang, '/beam/length')).toBe('L1 + L2 + a');
-    expect(texts(overhang, '/beam/supports')).toEqual(['0', 'L1', 'L1 + L2']);
-    expect(texts(overhang, '/beam/supports', '/kind')).toEqual(['pin', 'roller', 'roller']);
-    expect(texts(overhang, '/beam/dimensions', '/symbol')).toEqual(['L1', 'L2', 'a']);
-    expect(texts(overhang, '/parameters', '/symbol')).toEqual(['L1', 'L2', 'a']);
-  });
-
-  test('is released over its inner support, where a second span makes it continuous', () => {
-    expect(valueAt(span, '/beam/redundants')).toEqual([]);
-    expect(valueAt(overhang, '/beam/redundants')).toEqual([{ at: 'L1', component: 'moment' }]);
-  });
-
-  test('begun by an overhang it is a cantilever', () => {
-    const cantilever = added({}, extend({}, 'overhang'));
-    expect(valueAt(cantilever, '/beam/supports')).toEqual([{ at: '0', kind: 'fixed' }]);
-    expect('beam' in beamOf(sketched(cantilever))).toBe(true);
-  });
-
-  test('takes a point load at the tip, with its parameter and its kind', () => {
+describe('what is added to a beam', () => {
+  test('is a point load at the tip, with its parameter and its kind', () => {
     const loaded = put(overhang, 'point', 'L1 + L2 + a');
     expect(valueAt(loaded, '/beam/loads')).toEqual([{ kind: 'point', at: 'L1 + L2 + a', p: 'P' }]);
     expect(valueAt(loaded, '/load_kinds')).toEqual(['point']);
+    expect(texts(loaded, '/parameters', '/symbol')).toEqual(['L1', 'L2', 'a', 'P']);
     expect(drawnOf(sketched(loaded)).parts.map(({ name }) => name)).toContain(
-      'Point load P, group G, at L1 + L2 + a',
+      'Point load P, group Q, at L1 + L2 + a',
     );
   });
 
-  test('is as it was when all of it is taken back', () => {
-    const edits = extend(twoSpans, 'overhang').edits;
-    const { document, inverses } = applyEdits(twoSpans, edits);
-    expect(edited(document, inverses)).toEqual(twoSpans);
+  test('is released as the beam would itself, where it is more indeterminate for it', () => {
+    expect(valueAt(overhang, '/beam/redundants')).toEqual([{ at: 'L1', component: 'moment' }]);
+    const fixed = edited(overhang, supportEdits(overhang, '/beam/supports/0', 'fixed'));
+    expect(listAt(fixed, '/beam/redundants')).toHaveLength(2);
+    expect(textAt(fixed, '/arrangement')).toBe('multi-span');
+  });
+
+  test('is gone when all of it is taken back', () => {
+    const { edits } = addAt(overhang, sketched(overhang), 'spring', placeAt(overhang, 'L1/2'));
+    const { document, inverses } = applyEdits(overhang, edits);
+    expect(edited(document, inverses)).toEqual(overhang);
   });
 });
 
@@ -117,17 +108,13 @@ describe('places to put a part at', () => {
     const target = newPlaceAt(sketch, 8.27, 0.05);
     if (!target) throw new Error('there is a bay');
     const loaded = added(overhang, addAt(overhang, sketch, 'point', target));
-    expect(textAt(loaded, '/beam/loads/0/at')).toBe('L1 + c');
+    expect(textAt(loaded, '/beam/loads/0/at')).toBe('L1 + x');
     expect(textAt(loaded, '/parameters/3/default')).toBe('2.25 m');
-    expect(textAt(loaded, '/rules/0/expression')).toBe('L1 + c <= L1 + L2');
+    expect(textAt(loaded, '/rules/0/expression')).toBe('L1 + x <= L1 + L2');
     const again = placesOf(sketched(loaded)).map(({ text }) => text);
-    expect(again).toContain('c');
-    expect(again).toContain('L1 + c');
-    expect(edited(loaded, removal(loaded, '/beam/loads/0'))).toEqual({
-      ...overhang,
-      load_kinds: ['point'],
-      rules: [],
-    });
+    expect(again).toContain('x');
+    expect(again).toContain('L1 + x');
+    expect(edited(loaded, removal(loaded, '/beam/loads/0'))).toEqual(overhang);
   });
 });
 
@@ -223,7 +210,8 @@ describe('whatever is added, moved and taken away', () => {
     const place = of(placesOf(sketch));
     const part = of(drawnOf(sketch).parts);
     const whole = wholeOf(sketch);
-    if (act === 'span' || act === 'overhang') return extend(document, act).edits;
+    if (act === 'span') return addSpan(document).edits;
+    if (act === 'overhang') return addOverhang(document, pick % 2 === 0 ? 'left' : 'right').edits;
     if (act === 'over' || act === 'segment')
       return whole ? addOver(document, sketch, act === 'over' ? 'uniform' : 'segment', whole).edits : [];
     if (act === 'remove') return part && part.kind !== 'dimension' ? removal(document, part.pointer) : [];

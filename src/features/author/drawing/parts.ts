@@ -20,6 +20,8 @@ export interface Part {
   /** m; the same where the part stands at one place. */
   readonly from: number;
   readonly to: number;
+  /** Which of its kind it is in the drawn beam. */
+  readonly nth: number;
 }
 
 /** A support as it is drawn: springs beside its kind. */
@@ -76,7 +78,7 @@ function readingOf(sketch: Sketch): Reading {
 
 /** A part and what is drawn of it. */
 interface Read<T> {
-  readonly part: Part;
+  readonly part: Omit<Part, 'nth'>;
   readonly drawn: T;
 }
 
@@ -160,8 +162,8 @@ export function drawnOf(sketch: Sketch): Drawn {
       loads: drawn(loads).map(({ load }) => load),
       loadNames: drawn(loads).map(({ name }) => name),
     },
-    parts: [...supports, ...hinges, ...segments, ...loads, ...dimensions]
-      .map(({ part }) => part)
+    parts: [supports, hinges, segments, loads, dimensions]
+      .flatMap((list) => list.map(({ part }, nth): Part => ({ ...part, nth })))
       .sort((a, b) => a.from + a.to - b.from - b.to),
   };
 }

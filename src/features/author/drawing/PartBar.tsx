@@ -1,0 +1,136 @@
+import { Button } from '@/components/ui/Button';
+import { ChoiceField } from '@/components/ui/Field';
+import { type EditorState, textAt, valueAt } from '../edit';
+import {
+  choiceOf,
+  movedTo,
+  type PlaceKey,
+  removal,
+  SUPPORT_CHOICES,
+  type SupportChoice,
+  settlementEdits,
+  supportEdits,
+  whyKept,
+} from './change';
+import type { Part } from './parts';
+import { placesOf } from './places';
+import type { Sketch } from './sketch';
+
+interface PartBarProps {
+  readonly editor: EditorState;
+  readonly sketch: Sketch;
+  readonly part: Part;
+}
+
+const SUPPORT_WORDS: Readonly<Record<SupportChoice, string>> = {
+  fixed: 'Fixed',
+  pin: 'Pin',
+  roller: 'Roller',
+  guided: 'Guided',
+  free: 'Free',
+  spring: 'On a spring',
+  turning: 'Pin with a rotational spring',
+};
+
+/** The chosen part: how it holds, where it stands, and taking it away. */
+export function PartBar({ editor, sketch, part }: PartBarProps) {
+  const { document, readOnly } = editor;
+  const { pointer, kind, name } = part;
+  const why = whyKept(document, pointer);
+  const settles = textAt(document, `${pointer}/rise`) !== '';
+  return (
+    <fieldset
+      className="flex flex-wrap items-end gap-x-14 gap-y-8 border-t border-rule pt-8"
+      disabled={readOnly}
+    >
+      <legend className="sr-only">Chosen part</legend>
+      <p className="w-full font-semibold" aria-live="polite">
+        {name}
+      </p>
+      {kind === 'support' && <KindField editor={editor} pointer={pointer} />}
+      {KEYS.filter((key) => kind !== 'dimension' && valueAt(document, `${pointer}/${key}`) !== undefined).map(
+        (key) => (
+          <PlaceField key={key} editor={editor} sketch={sketch} pointer={pointer} of={key} />
+        ),
+      )}
+      {kind === 'support' && (
+        <Button
+          size="small"
+          aria-pressed={settles}
+          onClick={() => editor.edit(...settlementEdits(document, pointer))}
+        >
+          {settles ? 'Let it not settle' : 'Let it settle'}
+        </Button>
+      )}
+      <Button
+        size="small"
+        keyName={why === undefined ? 'Del' : undefined}
+        reason={why}
+        onClick={() => {
+          editor.select(null);
+          editor.edit(...removal(document, pointer));
+        }}
+      >
+        Remove
+      </Button>
+    </fieldset>
+  );
+}
+
+const KEYS = ['at', 'from', 'to'] as const;
+const KEY_WORDS: Readonly<Record<PlaceKey, string>> = { at: 'Place', from: 'From', to: 'To' };
+
+interface FieldProps {
+  readonly editor: EditorState;
+  readonly pointer: string;
+}
+
+function KindField({ editor, pointer }: FieldProps) {
+  const { document } = editor;
+  return (
+    <div className="w-180">
+      <ChoiceField
+        label="Kind"
+        data-part-first
+        choices={SUPPORT_CHOICES.map((value) => ({ value, label: SUPPORT_WORDS[value] }))}
+        value={choiceOf(valueAt(document, pointer))}
+        onChange={({ target }) => {
+          const choice = SUPPORT_CHOICES.find((one) => one === target.value);
+          if (choice) editor.edit(...supportEdits(document, pointer, choice));
+        }}
+      />
+    </div>
+  );
+}
+
+/** The places that there are expressions for; what the author wrote is among them. */
+function PlaceField({
+  editor,
+  sketch,
+  pointer,
+  of,
+}: FieldProps & { readonly sketch: Sketch; readonly of: PlaceKey }) {
+  const { document } = editor;
+  const written = textAt(document, `${pointer}/${of}`);
+  const places = placesOf(sketch);
+  const texts = [
+    ...new Set([
+      ...(places.some(({ text }) => text === written) ? [] : [written]),
+      ...places.map(({ text }) => text),
+    ]),
+  ];
+  return (
+    <div className="w-180">
+      <ChoiceField
+        label={KEY_WORDS[of]}
+        data-part-first
+        choices={texts.map((value) => ({ value, label: value }))}
+        value={written}
+        onChange={({ target }) => {
+          const place = places.find(({ text }) => text === target.value);
+          if (place) editor.edit(...movedTo(document, sketch, pointer, of, place));
+        }}
+      />
+    </div>
+  );
+}

@@ -1,0 +1,62 @@
+/** What the hand and the keys do to a part of the drawing. */
+import type { Expression } from '@/engine/template';
+import { type EditorState, valueAt } from '../edit';
+import { draggedTo, type Handle, handleOf, movedTo, removal, whyKept } from './change';
+import type { Part } from './parts';
+import { placesOf, snapped } from './places';
+import type { Sketch } from './sketch';
+
+/** Where a drag began: the hand's way is measured from there, whatever is drawn meanwhile. */
+interface Drag {
+  readonly sketch: Sketch;
+  readonly handle: Handle | null;
+  readonly from: number;
+}
+let begun: Drag | null = null;
+
+/** A dragged part draws to places within this share of the beam. */
+const REACH = 0.02;
+
+const placeIn = ({ template }: Sketch, part: Part): Expression | null => {
+  const at = valueAt(template, `${part.pointer}/at`);
+  return typeof at === 'object' && at !== null ? (at as Expression) : null;
+};
+
+export function partMoves(editor: EditorState, sketch: Sketch) {
+  const { document, readOnly } = editor;
+  const put = (part: Part, of: Sketch, x: number) => {
+    const place = snapped(placesOf(of), x, REACH * of.instance.beam.length);
+    const at = placeIn(sketch, part)?.text;
+    if (place && place.text !== at) editor.edit(...movedTo(document, sketch, part.pointer, 'at', place));
+  };
+  return {
+    remove(part: Part) {
+      if (readOnly || part.kind === 'dimension' || whyKept(document, part.pointer) !== undefined) return;
+      editor.select(null);
+      editor.edit(...removal(document, part.pointer));
+    },
+    /** A place that ends with a length changes the value shown; another is put from place to place. */
+    drag(part: Part, by: number, isBegun: boolean) {
+      if (isBegun || !begun) {
+        const at = placeIn(sketch, part);
+        begun = { sketch, handle: at && handleOf(sketch, at), from: part.from };
+      }
+      const { handle, from, sketch: before } = begun;
+      if (handle) editor.setValues(draggedTo(before.template, editor.values, handle, by));
+      else if (!readOnly && placeIn(sketch, part)) put(part, before, from + by);
+    },
+    /** By a step of the length that it ends with, or to the next place. */
+    nudge(part: Part, steps: number) {
+      const at = placeIn(sketch, part);
+      const handle = at && handleOf(sketch, at);
+      if (handle) {
+        editor.setValues(draggedTo(sketch.template, editor.values, handle, steps * handle.step));
+        return;
+      }
+      if (!at || readOnly) return;
+      const beyond = placesOf(sketch).filter(({ x }) => (x - part.from) * steps > 1e-9);
+      const next = steps > 0 ? beyond[0] : beyond.at(-1);
+      if (next) editor.edit(...movedTo(document, sketch, part.pointer, 'at', next));
+    },
+  };
+}

@@ -1,4 +1,5 @@
 import { seedCriteria } from '@/db/seed/criteria';
+import { seedMaterials } from '@/db/seed/materials';
 import { seedSections } from '@/db/seed/sections';
 import { seedTemplates } from '@/db/seed/templates';
 import { foundPractice, type Member } from './practice';
@@ -10,6 +11,7 @@ export async function stockLibrary(librarian: Member, checker: Member): Promise<
     ['Imogen Fairlocke', checker],
   ]);
   await seedSections(people);
+  await seedMaterials(people);
   await seedCriteria(people);
   await seedTemplates(people);
 }

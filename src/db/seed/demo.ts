@@ -1,5 +1,6 @@
 import { proveIssued } from '@/features/proof/prove.server';
 import { seedCriteria } from './criteria';
+import { seedMaterials } from './materials';
 import { seedMembers } from './members';
 import { findDemoPeople, foundDemoPractice } from './people';
 import { seedSections } from './sections';
@@ -14,6 +15,7 @@ export async function seedDemo(): Promise<boolean> {
   const people = await findDemoPeople();
   if (!people) return false;
   await seedSections(people);
+  await seedMaterials(people);
   await seedCriteria(people);
   await seedTemplates(people);
   await seedMembers(people);

@@ -62,7 +62,7 @@ export function askImpact(actor: Actor, key: RevisionKey, page: Page): Promise<P
 /** The issued revision that this one would take the place of. */
 async function issuedBeside(tx: Tx, row: RevisionRow): Promise<RevisionRow> {
   const { kind } = row.of;
-  if (kind !== 'template' && kind !== 'criteria' && kind !== 'section-table')
+  if (kind === 'combination-set')
     throw new AppError(
       'conflict',
       `Members do not pin a ${KIND_NAMES[kind]} itself: there is nothing to weigh.`,

@@ -5,9 +5,10 @@ import { job } from '@/db/schema/job';
 import { member } from '@/db/schema/member';
 import { section } from '@/db/schema/section';
 import { type Criteria, criteriaDocument } from '@/engine/check';
-import { materialFor } from '@/engine/section';
+import { type Material, materialFor, materialIn } from '@/engine/section';
 import type { Template } from '@/engine/template';
 import { ENGINE_VERSION } from '@/engine/version';
+import { readMaterials } from '@/features/material/material.server';
 import type { MemberInputs } from '@/features/member/evaluate';
 import { stored } from '@/features/member/row.server';
 import { revisionsById } from '@/features/review/library.server';
@@ -20,6 +21,7 @@ import type { Found } from './weigh';
 export class Pinned {
   private readonly templates = new Map<string, Template>();
   private readonly criteria = new Map<string, Criteria>();
+  private readonly materials = new Map<string, readonly Material[]>();
   private readonly sections = new Map<string, { key: string; values: SectionValues }>();
 
   constructor(private readonly practiceId: string) {}
@@ -27,9 +29,12 @@ export class Pinned {
   async load(tx: Tx, rows: readonly MemberRow[]): Promise<void> {
     const templates = missing(this.templates, rows, (row) => row.templateRevisionId);
     const criteria = missing(this.criteria, rows, (row) => row.criteriaRevisionId);
-    const revisions = await revisionsById(tx, this.practiceId, [...templates, ...criteria]);
+    const materials = missing(this.materials, rows, (row) => row.materialRevisionId);
+    const revisions = await revisionsById(tx, this.practiceId, [...templates, ...criteria, ...materials]);
     for (const one of revisions)
       if (templates.includes(one.revisionId)) this.templates.set(one.revisionId, templateOf(one));
+      else if (materials.includes(one.revisionId))
+        this.materials.set(one.revisionId, readMaterials(one).materials);
       else this.criteria.set(one.revisionId, criteriaDocument.parse(one.body));
     const sections = missing(this.sections, rows, (row) => row.sectionId);
     if (sections.length === 0) return;
@@ -40,11 +45,18 @@ export class Pinned {
     for (const { id, key, ...values } of found) this.sections.set(id, { key, values });
   }
 
+  private materialOf({ material: id, materialRevisionId }: MemberRow): Material | undefined {
+    if (id === null) return undefined;
+    return materialRevisionId === null
+      ? materialFor(id)
+      : materialIn(known(this.materials, materialRevisionId), id);
+  }
+
   /** What the member is evaluated from, and the key of its section. */
   inputsOf(row: MemberRow): { inputs: MemberInputs; sectionKey: string | null } {
     const settings = stored.settings.parse(row.settings);
     const pinned = row.sectionId === null ? null : known(this.sections, row.sectionId);
-    const material = pinned && materialFor(row.material ?? '');
+    const material = pinned && this.materialOf(row);
     return {
       inputs: {
         template: known(this.templates, row.templateRevisionId),
@@ -105,6 +117,7 @@ export const readMembers = (tx: Tx, practiceId: string, ids: readonly string[]) 
       criteriaRevisionId: member.criteriaRevisionId,
       sectionId: member.sectionId,
       material: member.material,
+      materialRevisionId: member.materialRevisionId,
       parameters: member.parameters,
       settings: member.settings,
       engineVersion: member.engineVersion,

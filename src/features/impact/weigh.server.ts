@@ -5,7 +5,9 @@ import type { Tx } from '@/db/client';
 import { impactMember, impactRun } from '@/db/schema/review';
 import { withPractice } from '@/db/tenancy';
 import { criteriaDocument } from '@/engine/check';
+import { materialsOf } from '@/engine/section';
 import { ENGINE_VERSION } from '@/engine/version';
+import { materialSetDocument } from '@/features/material/material';
 import { asWorker, eachPractice, takeTurn } from '@/features/proof/run.server';
 import { type RevisionRow, requireRevisionById } from '@/features/review/rows.server';
 import { type Use, usesOfRevision } from '@/features/review/uses.server';
@@ -109,6 +111,8 @@ async function replacementOf(tx: Tx, row: RevisionRow): Promise<Replacement> {
       return { kind: 'template', template: templateOf(row) };
     case 'criteria':
       return { kind: 'criteria', criteria: criteriaDocument.parse(row.body) };
+    case 'material-set':
+      return { kind: 'material-set', materials: materialsOf(materialSetDocument.parse(row.body)) };
     case 'section-table':
       return { kind: 'section-table', sections: await sectionsOf(tx, row.practiceId, row.id) };
     default:

@@ -1,5 +1,6 @@
 /** A member held against itself with another revision in place of one that it pins. Pure. */
 import type { Criteria } from '@/engine/check';
+import { type Material, materialIn } from '@/engine/section';
 import { judgeRules, type Template } from '@/engine/template';
 import { carryOver, parameterChanges } from '@/features/member/carry';
 import { evaluateMember, instanceOf, type MemberInputs } from '@/features/member/evaluate';
@@ -11,6 +12,7 @@ import type { Weighed } from './impact';
 export type Replacement =
   | { readonly kind: 'template'; readonly template: Template }
   | { readonly kind: 'criteria'; readonly criteria: Criteria }
+  | { readonly kind: 'material-set'; readonly materials: readonly Material[] }
   /** By the section's designation key; what is not there is not in the edition. */
   | { readonly kind: 'section-table'; readonly sections: ReadonlyMap<string, SectionValues> };
 
@@ -62,7 +64,9 @@ export function weigh(
       : { gone: [], taken: [] };
   const after = replaced(inputs, replacement, sectionKey);
   if (!after)
-    return lost(`Its section ${inputs.section?.values.designation ?? ''} is not in the new edition.`);
+    return lost(
+      `${missingPart(inputs, replacement)} is not in the new ${replacement.kind === 'section-table' ? 'edition' : 'revision'}.`,
+    );
   if (before.ok && replacement.kind === 'template' && isSameBeam(inputs, after, before.compared))
     return unchanged(changed);
   const found = findFigures(after);
@@ -81,6 +85,11 @@ export function weigh(
     largestChange: changes.largest,
   };
 }
+
+const missingPart = ({ section }: MemberInputs, { kind }: Replacement): string =>
+  kind === 'material-set'
+    ? `Its material ${section?.material.name ?? ''}`
+    : `Its section ${section?.values.designation ?? ''}`;
 
 /**
  * Whether both revisions make the same beam of the member, and no block rule of the new one refuses what is known of it:
@@ -128,6 +137,11 @@ function replaced(inputs: MemberInputs, replacement: Replacement, key: string | 
     }
     case 'criteria':
       return { ...inputs, criteria: replacement.criteria };
+    case 'material-set': {
+      const { section } = inputs;
+      const material = section && materialIn(replacement.materials, section.material.id);
+      return material ? { ...inputs, section: { ...section, material } } : null;
+    }
     case 'section-table': {
       const values = key === null ? undefined : replacement.sections.get(key);
       return inputs.section && values ? { ...inputs, section: { ...inputs.section, values } } : null;

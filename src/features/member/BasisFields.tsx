@@ -1,27 +1,30 @@
 import { Checkbox } from '@/components/ui/Choice';
 import { ChoiceField, Field } from '@/components/ui/Field';
+import { choiceOf } from '@/features/material/material';
 import type { FieldFaults } from '@/features/template/faults';
-import { materialsFor } from '@/features/template/section-pick';
-import type { CriteriaChoice, Draft } from './workspace';
+import { isMadeOf } from '@/features/template/section-pick';
+import type { CriteriaChoice, Draft, DraftSection, WorkspaceData } from './workspace';
 
 interface BasisFieldsProps {
   readonly draft: Draft;
-  readonly criteria: readonly CriteriaChoice[];
+  readonly data: Pick<WorkspaceData, 'criteria' | 'materials'>;
   readonly faults: FieldFaults;
   readonly onChange: (part: Partial<Draft>) => void;
 }
 
 /** What the member is made of and judged by, beside its parameters. */
-export function BasisFields({ draft, criteria, faults, onChange }: BasisFieldsProps) {
+export function BasisFields({ draft, data, faults, onChange }: BasisFieldsProps) {
   const { section } = draft;
+  const { criteria, materials } = data;
   return (
     <>
       <div className="px-14 pt-8 pb-9">
         {section && (
           <ChoiceField
             label="Material"
-            value={section.material}
-            choices={materialsFor(section.values).map(({ id, name }) => ({ value: id, label: name }))}
+            value={choiceOf(materials, section.material)?.key ?? ''}
+            choices={materialChoices(section, materials)}
+            help={setOf(choiceOf(materials, section.material))}
             error={faults.get('section/material') ?? faults.get('section')}
             onChange={(event) => onChange({ section: { ...section, material: event.target.value } })}
           />
@@ -49,6 +52,22 @@ export function BasisFields({ draft, criteria, faults, onChange }: BasisFieldsPr
     </>
   );
 }
+
+/** Those of the section's kind; by their sets where two have a name in common. */
+function materialChoices(
+  { values }: DraftSection,
+  materials: WorkspaceData['materials'],
+): { value: string; label: string }[] {
+  const usable = materials.filter(({ material }) => isMadeOf(values, material));
+  return usable.map(({ key, material, set }) => {
+    const isAlone = usable.filter((other) => other.material.name === material.name).length === 1;
+    return { value: key, label: isAlone ? material.name : `${material.name}, ${set?.name ?? 'as shipped'}` };
+  });
+}
+
+/** Where its values stand. */
+const setOf = (choice: WorkspaceData['materials'][number] | undefined): string | undefined =>
+  choice && (choice.set ? `${choice.set.name}, revision ${choice.set.revision}` : 'As shipped, of no set.');
 
 function OwnWeight({ draft, onChange }: Pick<BasisFieldsProps, 'draft' | 'onChange'>) {
   return (

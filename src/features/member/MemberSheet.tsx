@@ -192,7 +192,7 @@ function Inputs({ data, work: { draft, change, faults } }: PartProps) {
         groups={GROUPS}
         onChange={(symbol, value) => change({ raw: { ...draft.raw, [symbol]: value } })}
       >
-        <BasisFields draft={draft} criteria={data.criteria} faults={faults} onChange={change} />
+        <BasisFields draft={draft} data={data} faults={faults} onChange={change} />
       </ParameterFields>
     </fieldset>
   );
@@ -217,6 +217,7 @@ function Zones({ data, work }: PartProps) {
           <SectionZone
             section={draft.section}
             inputs={inputs}
+            materials={data.materials}
             system={system}
             mayEdit={data.mayEdit}
             onPick={(section) => change({ section })}

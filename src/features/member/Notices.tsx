@@ -15,7 +15,7 @@ interface PinNoticesProps {
 
 /** What is to be known of what the member pins, and what is newer: shown before and after, upgraded when it is pressed. */
 export function PinNotices({ member, host }: PinNoticesProps) {
-  const { template, criteria, section } = member;
+  const { template, criteria, section, materials } = member;
   const lines = [
     ...pinLine(template, (template_revision) => ({ template_revision })),
     ...factLines(`${template.reference} revision ${template.revision}`, template),
@@ -26,6 +26,12 @@ export function PinNotices({ member, host }: PinNoticesProps) {
         ]
       : []),
     ...(section ? editionLines(section) : []),
+    ...(materials
+      ? [
+          ...pinLine(materials, (material_revision) => ({ material_revision })),
+          ...factLines(`${materials.reference} revision ${materials.revision}`, materials),
+        ]
+      : []),
   ];
   return lines.map(({ title, detail, tone, recall, upgrade }) =>
     upgrade ? (

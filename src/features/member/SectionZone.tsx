@@ -3,6 +3,7 @@ import { Field } from '@/components/ui/Field';
 import { UtilisationTick } from '@/components/ui/UtilisationTick';
 import { ZoneHeading } from '@/components/ui/ZoneHeading';
 import { formatFor, readQuantity, type UnitSystemName } from '@/engine/quantity';
+import type { MaterialChoice } from '@/features/material/material';
 import type { SectionItem } from '@/features/section/section';
 import { draftSection, type Utilisation } from './candidates';
 import type { MemberInputs } from './evaluate';
@@ -12,6 +13,7 @@ import type { DraftSection } from './workspace';
 interface SectionZoneProps {
   readonly section: DraftSection | null;
   readonly inputs: MemberInputs;
+  readonly materials: readonly MaterialChoice[];
   readonly system: UnitSystemName;
   readonly mayEdit: boolean;
   readonly onPick: (section: DraftSection) => void;
@@ -24,7 +26,7 @@ const UNITS = {
 const NONE: readonly SectionItem[] = [];
 
 /** Sections by designation, depth and mass, the lightest first, each judged with the member's loads. */
-export function SectionZone({ section, inputs, system, mayEdit, onPick }: SectionZoneProps) {
+export function SectionZone({ section, inputs, materials, system, mayEdit, onPick }: SectionZoneProps) {
   const [text, setText] = useState({ q: '', depth: '', mass: '' });
   const units = UNITS[system];
   const depth = limit(text.depth, 'length', units.depth);
@@ -36,7 +38,7 @@ export function SectionZone({ section, inputs, system, mayEdit, onPick }: Sectio
   };
   const found = useCandidates(search, section);
   const items = found.state === 'found' ? found.items : NONE;
-  const utilisations = useUtilisations(items, inputs, section);
+  const utilisations = useUtilisations(items, inputs, section, materials);
   return (
     <section className="zone">
       <ZoneHeading letter="C" note="lightest first">

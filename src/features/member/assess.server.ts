@@ -62,6 +62,7 @@ export function assessMember(pins: Pins, given: Given, system: UnitSystemName): 
       template: template.sha256,
       criteria: criteria?.sha256 ?? null,
       section: section && { edition: section.row.sha256, values: section.row.values },
+      ...(section?.set && { materials: section.set.sha256 }),
     },
     engine: ENGINE_VERSION,
     result,

@@ -1,5 +1,5 @@
 import type { CheckKind } from '@/engine/check';
-import { materialFor } from '@/engine/section';
+import { choiceOf, type MaterialChoice } from '@/features/material/material';
 import { type SectionItem, toRowOrigin, toSectionValues } from '@/features/section/section';
 import { usualMaterial } from '@/features/template/section-pick';
 import { evaluateMember, type MemberInputs } from './evaluate';
@@ -51,9 +51,13 @@ export function draftSection(item: SectionItem, current: DraftSection | null): D
 export type Utilisation = { readonly [K in CheckKind]: number | null };
 
 /** The worst of each kind of check with another section; what cannot be evaluated says why. */
-export function utilisationWith(inputs: MemberInputs, section: DraftSection): Utilisation | string {
-  const material = materialFor(section.material);
-  if (!material) return 'no material';
+export function utilisationWith(
+  inputs: MemberInputs,
+  section: DraftSection,
+  materials: readonly MaterialChoice[],
+): Utilisation | string {
+  const material = choiceOf(materials, section.material)?.material;
+  if (!material) return 'its material is not in the issued sets';
   const reading = evaluateMember({ ...inputs, section: { values: section.values, material } });
   if (!reading.ok) return reading.faults[0]?.message ?? 'not possible';
   const rows = reading.evaluation.checks?.rows ?? [];

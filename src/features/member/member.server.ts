@@ -4,6 +4,7 @@ import { withPractice } from '@/db/tenancy';
 import type { Template } from '@/engine/template';
 import { recordAudit } from '@/features/audit/audit.server';
 import { type Actor, type Found, type JobRow, openJob, type Page, touchJob } from '@/features/job/job.server';
+import { materialKey } from '@/features/material/material';
 import { decideByUpgrade } from '@/features/review/recall.server';
 import { AppError, invalid, stale } from '@/lib/app-error';
 import { type Assessment, assessMember } from './assess.server';
@@ -92,7 +93,7 @@ export function saveMember(
     const pins = {
       template: await moveTemplate(tx, practiceId, pinned.template, body.template_revision),
       criteria: await placeCriteria(tx, practiceId, body.criteria, pinned.criteria, body.criteria_revision),
-      section: await placeSection(tx, practiceId, body.section, pinned.section, body.section_edition),
+      section: await placeSection(tx, practiceId, body.section, pinned.section, body),
     };
     const parameters = carryOver(pinned.template.document, pins.template.document, body.parameters);
     const given = { ...body, parameters: whole(pins.template.document, parameters) };
@@ -130,7 +131,7 @@ export function tryMember(actor: Actor, number: string, mark: string, body: TryM
     const pins = {
       template: await moveTemplate(tx, practiceId, pinned.template, body.template_revision),
       criteria: await placeCriteria(tx, practiceId, criteria, pinned.criteria, body.criteria_revision),
-      section: await placeSection(tx, practiceId, section, pinned.section, body.section_edition),
+      section: await placeSection(tx, practiceId, section, pinned.section, body),
     };
     const given = {
       parameters: carryOver(pinned.template.document, pins.template.document, {
@@ -149,7 +150,7 @@ const choiceOf = (section: Pins['section']): SaveMember['section'] =>
   section && {
     designation: section.row.values.designation,
     table: section.row.table,
-    material: section.material.id,
+    material: materialKey(section.material.id, section.set?.slug),
   };
 
 /** Every parameter of the template, so that a member says all of what it was evaluated at. */
@@ -186,6 +187,7 @@ function toColumns(
     criteriaRevisionId: pins.criteria?.revisionId ?? null,
     sectionId: pins.section?.row.id ?? null,
     material: pins.section?.material.id ?? null,
+    materialRevisionId: pins.section?.set?.revisionId ?? null,
     parameters: body.parameters,
     settings,
     result,
@@ -232,6 +234,7 @@ const traceOf = ({
   version,
   template,
   section,
+  materials,
   criteria,
   ...view
 }: MemberView) => ({
@@ -242,6 +245,7 @@ const traceOf = ({
   version,
   template: `${template.slug} ${template.revision}`,
   section: section && `${section.table} ${section.edition} ${section.designation} ${section.material}`,
+  materials: materials && `${materials.slug} ${materials.revision}`,
   criteria: criteria && `${criteria.slug} ${criteria.revision}`,
   parameters: view.parameters,
   self_weight: view.self_weight,

@@ -52,6 +52,7 @@ const moves = {
   template_revision: z.int().positive().optional(),
   criteria_revision: z.int().positive().optional(),
   section_edition: z.int().positive().optional(),
+  material_revision: z.int().positive().optional(),
 };
 export type Moves = { readonly [K in keyof typeof moves]?: number | undefined };
 
@@ -157,6 +158,8 @@ export const MemberView = z.strictObject({
   template: Pin,
   ...inputs,
   section: SectionPin.nullable(),
+  /** The set that the section's material is read from; null without a section, or for a material as it was shipped. */
+  materials: Pin.nullable(),
   criteria: Pin.nullable(),
   ...Evaluated,
   evaluated_at: z.iso.datetime().nullable(),

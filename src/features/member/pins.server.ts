@@ -1,26 +1,27 @@
 import type { Tx } from '@/db/client';
 import { type Criteria, criteriaDocument } from '@/engine/check';
-import type { Material } from '@/engine/section';
-import { materialFor } from '@/engine/section';
+import { materialIn } from '@/engine/section';
 import type { Template } from '@/engine/template';
+import {
+  type PlacedMaterial,
+  pinnedMaterial,
+  placeMaterial,
+  readMaterials,
+} from '@/features/material/material.server';
 import { findRevision, type LibraryRevision, revisionsById } from '@/features/review/library.server';
 import type { PinFacts } from '@/features/review/pin';
 import { holdForUse } from '@/features/review/pin.server';
-import {
-  type ChosenSection,
-  chooseMaterial,
-  chooseSection,
-  pinnedSection,
-} from '@/features/section/choose.server';
+import type { DocumentKind } from '@/features/review/review';
+import { type ChosenSection, chooseSection, pinnedSection } from '@/features/section/choose.server';
 import { templateOf } from '@/features/template/template.server';
 import { type Fault, invalid } from '@/lib/app-error';
-import type { Pin, SaveMember } from './member';
+import type { Moves, Pin, SaveMember } from './member';
 
 /** The library documents that a member pins, read. */
 export interface Pins {
   readonly template: LibraryRevision & { readonly document: Template };
   readonly criteria: (LibraryRevision & { readonly document: Criteria }) | null;
-  readonly section: { readonly row: ChosenSection; readonly material: Material } | null;
+  readonly section: ({ readonly row: ChosenSection } & PlacedMaterial) | null;
 }
 
 /** As the member's row holds them. */
@@ -29,6 +30,7 @@ export interface PinIds {
   readonly criteriaRevisionId: string | null;
   readonly sectionId: string | null;
   readonly material: string | null;
+  readonly materialRevisionId: string | null;
 }
 
 /** A pinned revision cannot go: the database keeps what members depend on. */
@@ -49,7 +51,7 @@ const asCriteria = (revision: LibraryRevision) => ({
 });
 
 export async function loadPins(tx: Tx, practiceId: string, ids: PinIds): Promise<Pins> {
-  const { templateRevisionId, criteriaRevisionId, sectionId, material } = ids;
+  const { templateRevisionId, criteriaRevisionId } = ids;
   const wanted = [templateRevisionId, criteriaRevisionId].filter((id) => id !== null);
   const revisions = await revisionsById(tx, practiceId, wanted);
   const revision = (what: string, id: string): LibraryRevision => {
@@ -60,16 +62,21 @@ export async function loadPins(tx: Tx, practiceId: string, ids: PinIds): Promise
   return {
     template: asTemplate(revision('template revision', templateRevisionId)),
     criteria: criteriaRevisionId === null ? null : asCriteria(revision('criteria', criteriaRevisionId)),
-    section: sectionId === null ? null : await loadSection(tx, practiceId, sectionId, material ?? ''),
+    section: ids.sectionId === null ? null : await loadSection(tx, practiceId, ids.sectionId, ids),
   };
 }
 
-async function loadSection(tx: Tx, practiceId: string, id: string, materialId: string) {
+async function loadSection(
+  tx: Tx,
+  practiceId: string,
+  id: string,
+  { material, materialRevisionId }: Pick<PinIds, 'material' | 'materialRevisionId'>,
+) {
   const row = await pinnedSection(tx, practiceId, id);
   if (!row) throw new MissingPin('section', id);
-  const material = materialFor(materialId);
-  if (!material) throw new MissingPin('material', materialId);
-  return { row, material };
+  const placed = await pinnedMaterial(tx, practiceId, material ?? '', materialRevisionId);
+  if (!placed) throw new MissingPin('material', `${material} of ${materialRevisionId}`);
+  return { row, ...placed };
 }
 
 const refused = (pointer: string, code: string, message: string) => {
@@ -110,15 +117,22 @@ export async function moveTemplate(
   return asTemplate(await issuedRevision(tx, practiceId, 'template', pinned.slug, number));
 }
 
+/** Where a request names the revision to move to. */
+const MOVED_AT = {
+  template: '/template_revision',
+  criteria: '/criteria_revision',
+  'material-set': '/material_revision',
+} as const;
+
 /** A revision of a document that a member pins already: its review does not stand in the way of leaving an older one. */
 async function issuedRevision(
   tx: Tx,
   practiceId: string,
-  kind: 'template' | 'criteria',
+  kind: keyof typeof MOVED_AT,
   slug: string,
   number: number,
 ): Promise<LibraryRevision> {
-  const at = `/${kind}_revision`;
+  const at = MOVED_AT[kind];
   const found = await findRevision(tx, practiceId, { kind, slug, number });
   if (!found)
     throw refused(at, 'unknown_revision', `“${slug}” has no revision ${number}. Choose one that is issued.`);
@@ -151,22 +165,43 @@ export async function placeCriteria(
   );
 }
 
+/** What a section is made of, of the revision of its set to move to. */
+async function materialOf(
+  tx: Tx,
+  practiceId: string,
+  key: string,
+  pinned: Pins['section'],
+  number: number | undefined,
+): Promise<PlacedMaterial> {
+  const placed = await placeMaterial(tx, practiceId, key, pinned);
+  const { set, material } = placed;
+  if (number === undefined || !set || number === set.number) return { set, material };
+  const moved = readMaterials(await issuedRevision(tx, practiceId, 'material-set', set.slug, number));
+  const other = materialIn(moved.materials, material.id);
+  if (other) return { set: moved.set, material: other };
+  throw refused(
+    '/section/material',
+    'unknown_material',
+    `${moved.set.reference} revision ${number} has no ${material.name} any more. Choose another material.`,
+  );
+}
+
 /**
  * A section as named: the row that is pinned stays unless its table is moved to another edition; another section comes
- * from the issued edition of its table.
+ * from the issued edition of its table. Its material comes from the set that is pinned, or from an issued one.
  */
 export async function placeSection(
   tx: Tx,
   practiceId: string,
   choice: SaveMember['section'],
   pinned: Pins['section'],
-  edition?: number,
+  { section_edition: edition, material_revision: number }: Moves = {},
 ): Promise<Pins['section']> {
   if (choice === null) return null;
-  const material = chooseMaterial(choice.material);
+  const made = await materialOf(tx, practiceId, choice.material, pinned, number);
   const { row } = pinned ?? {};
   const isSame = row?.values.designation === choice.designation && (choice.table ?? row.table) === row.table;
-  if (row && isSame && (edition === undefined || edition === row.edition)) return { row, material };
+  if (row && isSame && (edition === undefined || edition === row.edition)) return { row, ...made };
   const chosen = await chooseSection(tx, practiceId, choice);
   if (edition !== undefined && edition !== chosen.edition)
     throw refused(
@@ -175,7 +210,7 @@ export async function placeSection(
       `Edition ${edition} of ${chosen.tableName} is not issued; edition ${chosen.edition} is. Compare with that one.`,
     );
   await holdForUse(tx, practiceId, chosen.revisionId, '/section', { isNew: !isSame });
-  return { row: chosen, material };
+  return { row: chosen, ...made };
 }
 
 export const NO_FACTS: PinFacts = {
@@ -190,7 +225,7 @@ export const NO_FACTS: PinFacts = {
 export async function toPin(
   tx: Tx,
   practiceId: string,
-  kind: 'template' | 'criteria',
+  kind: DocumentKind,
   pinned: LibraryRevision,
   facts: PinFacts = NO_FACTS,
 ): Promise<Pin> {

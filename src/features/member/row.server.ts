@@ -157,7 +157,12 @@ function toMemberItem(row: MemberRow, template: LibraryRevision | undefined, rec
 export async function toMemberView(tx: Tx, row: MemberRow, job: string, pins?: Pins): Promise<MemberView> {
   const { practiceId, settings } = row;
   const { template, criteria, section } = pins ?? (await loadPins(tx, practiceId, row));
-  const pinned = [template.revisionId, criteria?.revisionId, section?.row.revisionId];
+  const pinned = [
+    template.revisionId,
+    criteria?.revisionId,
+    section?.row.revisionId,
+    section?.set?.revisionId,
+  ];
   const facts = await factsOfPins(
     tx,
     practiceId,
@@ -185,6 +190,9 @@ export async function toMemberView(tx: Tx, row: MemberRow, job: string, pins?: P
       ...(facts.get(section.row.revisionId) ?? NO_FACTS),
       material: section.material.id,
     },
+    materials: section?.set
+      ? await toPin(tx, practiceId, 'material-set', section.set, facts.get(section.set.revisionId))
+      : null,
     criteria: criteria && (await toPin(tx, practiceId, 'criteria', criteria, facts.get(criteria.revisionId))),
     result: row.result,
     fingerprint: row.fingerprint,

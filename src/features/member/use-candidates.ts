@@ -1,4 +1,5 @@
 import { useEffect, useState } from 'react';
+import type { MaterialChoice } from '@/features/material/material';
 import type { SectionItem } from '@/features/section/section';
 import { fetchSections } from '@/features/section/section.api';
 import { useRestedValue } from '@/features/template/use-live';
@@ -50,6 +51,7 @@ export function useUtilisations(
   items: readonly SectionItem[],
   inputs: MemberInputs,
   current: DraftSection | null,
+  materials: readonly MaterialChoice[],
 ): ReadonlyMap<SectionItem, Utilisation | string> {
   const rested = useRestedValue(inputs, INPUTS_REST_MS);
   const [found, setFound] = useState<ReadonlyMap<SectionItem, Utilisation | string>>(new Map());
@@ -59,11 +61,11 @@ export function useUtilisations(
     const next = (index: number) => {
       const item = items[index];
       if (!item) return setFound(new Map(results));
-      results.set(item, utilisationWith(rested, draftSection(item, current)));
+      results.set(item, utilisationWith(rested, draftSection(item, current), materials));
       timer = setTimeout(() => next(index + 1));
     };
     timer = setTimeout(() => next(0));
     return () => clearTimeout(timer);
-  }, [items, rested, current]);
+  }, [items, rested, current, materials]);
   return found;
 }

@@ -3,11 +3,14 @@ import type { Tx } from '@/db/client';
 import { person } from '@/db/schema/account';
 import { auditEvent } from '@/db/schema/audit';
 import { withPractice } from '@/db/tenancy';
+import { MATERIALS } from '@/engine/section';
 import { may } from '@/features/account/permission';
 import { listCriteria } from '@/features/criteria/criteria.server';
 import { type Actor, openJob } from '@/features/job/job.server';
+import { type MaterialChoice, materialKey } from '@/features/material/material';
+import { issuedMaterials, readMaterials } from '@/features/material/material.server';
 import { toRowOrigin } from '@/features/section/section';
-import { loadPins } from './pins.server';
+import { loadPins, type Pins } from './pins.server';
 import { requireMember, toMemberView } from './row.server';
 import { changesOf, type HistoryLine, type WorkspaceData } from './workspace';
 
@@ -33,6 +36,7 @@ export async function readWorkspace(user: Actor, number: string, mark: string): 
       job: { number: job.number, name: job.name, unitSystem: job.unitSystem },
       template: template.document,
       section: section?.row.values ?? null,
+      materials: await materialChoices(tx, user.practiceId, section),
       sectionOrigin: section ? toRowOrigin(section.row) : undefined,
       criteria: pinned ? [pinned, ...others] : others,
       history: await historyOf(tx, user.practiceId, row.id),
@@ -40,6 +44,26 @@ export async function readWorkspace(user: Actor, number: string, mark: string): 
       mayEdit: job.status === 'open' && may(user, 'member.edit', { access: 'practice' }),
     };
   });
+}
+
+/** What sections may be made of: the pinned revision of its set, and the issued one of every other. */
+async function materialChoices(
+  tx: Tx,
+  practiceId: string,
+  pinned: Pins['section'],
+): Promise<MaterialChoice[]> {
+  const issued = await issuedMaterials(tx, practiceId);
+  const held = pinned?.set ? [readMaterials(pinned.set)] : [];
+  const others = issued.filter(({ set }) => set.slug !== pinned?.set?.slug);
+  const choices = [...held, ...others].flatMap(({ set, materials }) =>
+    materials.map((material) => ({
+      key: materialKey(material.id, set.slug),
+      material,
+      set: { slug: set.slug, name: set.name, revision: set.number },
+    })),
+  );
+  const shipped = issued.length === 0 ? MATERIALS : pinned && !pinned.set ? [pinned.material] : [];
+  return [...shipped.map((material) => ({ key: material.id, material, set: null })), ...choices];
 }
 
 const MOST_EVENTS = 50;

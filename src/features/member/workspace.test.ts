@@ -1,6 +1,6 @@
 import { describe, expect, test } from 'vitest';
 import { criteriaDocument } from '@/engine/check';
-import { materialFor } from '@/engine/section';
+import { MATERIALS, materialFor } from '@/engine/section';
 import criteria from '../../../data/criteria/steel-elastic-en.json';
 import { shippedTemplate } from '../../../tests/support/templates';
 import { draftSection, sectionQuery, utilisationWith } from './candidates';
@@ -19,6 +19,7 @@ const IPE_300 = {
   wElCm3: 557,
 };
 const S355 = materialFor('s355');
+const MATERIAL_CHOICES = MATERIALS.map((material) => ({ key: material.id, material, set: null }));
 if (!S355) throw new Error('S355 is shipped');
 
 const inputs = (change: Partial<MemberInputs> = {}): MemberInputs => ({
@@ -144,7 +145,7 @@ describe('candidate sections', () => {
   };
 
   test('are judged as the member would be with them', () => {
-    const found = utilisationWith(inputs({ section: null }), draftSection(item, null));
+    const found = utilisationWith(inputs({ section: null }), draftSection(item, null), MATERIAL_CHOICES);
     const rows = evaluated().checks?.rows ?? [];
     const bending = rows.find(({ kind }) => kind === 'bending')?.ratio ?? Number.NaN;
     expect(found).toMatchObject({ bending: expect.closeTo(bending, 9) });

@@ -2,8 +2,8 @@
 import type { Criteria } from '@/engine/check';
 import type { Redundant } from '@/engine/model';
 import type { UnitSystemName } from '@/engine/quantity';
-import { materialFor } from '@/engine/section';
 import type { Template } from '@/engine/template';
+import { choiceOf, type MaterialChoice, materialKey } from '@/features/material/material';
 import type { SectionValues } from '@/features/section/resolve';
 import type { RowOrigin } from '@/features/section/section';
 import { type Raw, toParameters, toRaw } from '@/features/template/raw';
@@ -32,6 +32,7 @@ export interface WorkspaceData {
   readonly section: SectionValues | null;
   /** Where the pinned section's values stand. */
   readonly sectionOrigin?: RowOrigin | undefined;
+  readonly materials: readonly MaterialChoice[];
   readonly criteria: readonly CriteriaChoice[];
   readonly history: readonly HistoryLine[];
   readonly mayEdit: boolean;
@@ -58,6 +59,10 @@ export interface Draft {
   readonly redundants: readonly Redundant[] | null;
 }
 
+/** How the member's material is named in the choices. */
+const keyOf = ({ materials }: MemberView, { material }: { readonly material: string }): string =>
+  materialKey(material, materials?.slug);
+
 export const toDraft = (
   member: MemberView,
   template: Template,
@@ -69,7 +74,7 @@ export const toDraft = (
   raw: toRaw(template, member.parameters, { system, byGroup: true }),
   section:
     member.section && values
-      ? { values, table: member.section.table, material: member.section.material }
+      ? { values, table: member.section.table, material: keyOf(member, member.section) }
       : null,
   criteria: member.criteria?.slug ?? '',
   selfWeight: member.self_weight,
@@ -110,9 +115,9 @@ export const toBody = (draft: Draft, template: Template, { status, reason }: Sta
 /** What the draft is evaluated from, in the browser as on the server. */
 export function toInputs(
   draft: Draft,
-  { template, criteria, job }: Pick<WorkspaceData, 'template' | 'criteria' | 'job'>,
+  { template, materials, criteria, job }: Pick<WorkspaceData, 'template' | 'materials' | 'criteria' | 'job'>,
 ): MemberInputs {
-  const material = draft.section && materialFor(draft.section.material);
+  const material = draft.section && choiceOf(materials, draft.section.material)?.material;
   return {
     template,
     parameters: toParameters(template, draft.raw),
@@ -190,7 +195,7 @@ export const bodyOf = (member: MemberView): SaveMember => ({
   section: member.section && {
     designation: member.section.designation,
     table: member.section.table,
-    material: member.section.material,
+    material: keyOf(member, member.section),
   },
   criteria: member.criteria?.slug ?? null,
   self_weight: member.self_weight,

@@ -1,6 +1,7 @@
 /** From what an author writes to the document that is stored. The server's alone: it loads the expression parser. */
 import type { z } from 'zod';
 import { criteriaDocument } from '@/engine/check';
+import { materialSetDocument } from '@/features/material/material';
 import type { Fault } from '@/lib/app-error';
 import { read } from '@/lib/read';
 import type { Written } from './draft';
@@ -13,6 +14,7 @@ type Reader = (document: Written) => DocumentReading;
 const READERS: Partial<Record<DocumentKind, Reader>> = {
   template: readTemplate,
   criteria: (document) => bySchema(criteriaDocument, document),
+  'material-set': (document) => bySchema(materialSetDocument, document),
 };
 
 export const readerOf = (kind: DocumentKind): Reader | undefined => READERS[kind];

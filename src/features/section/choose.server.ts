@@ -2,7 +2,7 @@ import { and, desc, eq } from 'drizzle-orm';
 import type { Tx } from '@/db/client';
 import { document, revision } from '@/db/schema/library';
 import { section } from '@/db/schema/section';
-import { designationKey, MATERIALS, type Material, materialFor } from '@/engine/section';
+import { designationKey } from '@/engine/section';
 import type { RevisionState } from '@/features/review/review';
 import { type Fault, invalid } from '@/lib/app-error';
 import type { SectionValues } from './resolve';
@@ -131,16 +131,6 @@ async function refuseWithdrawn(
   if (!found) return;
   const message = `“${designation}” stands in edition ${found.edition} of ${found.tableName}, which was withdrawn: ${found.withdrawalReason} Choose a section of another table.`;
   throw invalid([fault(at, 'designation', 'withdrawn', message)]);
-}
-
-/** A shipped material by its id, or 422. */
-export function chooseMaterial(id: string, at = '/section'): Material {
-  const material = materialFor(id);
-  if (material) return material;
-  const known = MATERIALS.map((one) => one.id).join(', ');
-  throw invalid([
-    fault(at, 'material', 'unknown_material', `There is no material “${id}”. Give one of ${known}.`),
-  ]);
 }
 
 const fault = (at: string, field: string, code: string, message: string): Fault => ({

@@ -4,10 +4,14 @@ import type { RowOrigin } from '@/features/section/section';
 import type { PickedSection } from './page';
 
 /** What a section may be made of, the usual one first. */
-export const materialsFor = ({ dimensions }: Pick<SectionValues, 'dimensions'>): readonly Material[] => {
-  const isTimber = dimensions.shape === 'rectangle';
-  return MATERIALS.filter(({ kind }) => (kind !== 'steel') === isTimber);
-};
+export const materialsFor = (values: Pick<SectionValues, 'dimensions'>): readonly Material[] =>
+  MATERIALS.filter((material) => isMadeOf(values, material));
+
+/** Whether such sections are made of such a material: rectangles of timber, all others of steel. */
+export const isMadeOf = (
+  { dimensions }: Pick<SectionValues, 'dimensions'>,
+  { kind }: Pick<Material, 'kind'>,
+): boolean => (kind !== 'steel') === (dimensions.shape === 'rectangle');
 
 const USUAL: Readonly<Record<string, string>> = {
   'american-wide-flange': 'a992',

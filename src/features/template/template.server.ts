@@ -3,6 +3,7 @@ import { type Tenant, withPractice } from '@/db/tenancy';
 import { type ProofResult, runProofCases, type Template } from '@/engine/template';
 import { templateDocument } from '@/engine/template/document';
 import { type Person, requirePermission } from '@/features/account/permission';
+import { chooseMaterial } from '@/features/material/material.server';
 import { unfinishedOf } from '@/features/review/draft';
 import {
   currentRevisions,
@@ -12,7 +13,7 @@ import {
   NO_USES,
   usesByDocument,
 } from '@/features/review/library.server';
-import { chooseMaterial, chooseSection } from '@/features/section/choose.server';
+import { chooseSection } from '@/features/section/choose.server';
 import { resolveSection } from '@/features/section/resolve';
 import { AppError, invalid, notFound } from '@/lib/app-error';
 import { toEvaluateAnswer } from './answer';
@@ -166,7 +167,7 @@ async function sectionOf(
   practiceId: string,
   choice: NonNullable<EvaluateRequest['section']>,
 ): Promise<SectionOfTemplate> {
-  const material = chooseMaterial(choice.material);
+  const { material } = await chooseMaterial(tx, practiceId, choice.material);
   const { values } = await chooseSection(tx, practiceId, choice);
   const resolution = resolveSection(values, material);
   if (resolution.ok) return resolution.section;

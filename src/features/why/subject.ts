@@ -1,7 +1,7 @@
 /** What the engine is asked about, out of what a page has evaluated. Pure. */
 import type { Redundant } from '@/engine/model';
 import type { UnitSystemName } from '@/engine/quantity';
-import { materialFor } from '@/engine/section';
+import { type Material, materialFor } from '@/engine/section';
 import { readParameters, type Template, type Values } from '@/engine/template';
 import type { Subject, SubjectSection } from '@/engine/why';
 import type { MemberEvaluation, MemberInputs } from '@/features/member/evaluate';
@@ -66,7 +66,7 @@ function ofTemplate({
     typed: parameters,
     values: valuesOf(template, parameters),
     system,
-    section: section && sectionOf(section),
+    section: section && sectionOf(section, materialFor(section.material)),
     typedEi: ei,
     patterned: [],
     criteria: null,
@@ -83,7 +83,7 @@ function ofMember({ inputs, evaluation, revision, section, criteriaRevision }: M
     typed: parameters,
     values: valuesOf(template, parameters),
     system,
-    section: section && sectionOf(section),
+    section: section && sectionOf(section, inputs.section?.material),
     typedEi: null,
     patterned: evaluation.patterning.groups,
     criteria: criteria && {
@@ -101,8 +101,10 @@ function valuesOf(template: Template, parameters: Readonly<Record<string, unknow
   return reading.ok ? reading.values : {};
 }
 
-function sectionOf({ values, table, material: id, origin }: ChosenSection): SubjectSection | null {
-  const material = materialFor(id);
+function sectionOf(
+  { values, table, origin }: ChosenSection,
+  material: Material | undefined,
+): SubjectSection | null {
   return (
     (material && {
       ...values,

@@ -61,21 +61,28 @@ export class AttainedPlaces {
       if (j > 0) slope[j - 1] = sum[j]! * j;
     }
     const turns = degree > 1 ? this.roots.find(slope, degree - 1) : 0;
-    return this.distinct(this.roots.roots.subarray(0, turns)).filter((t) => horner(sum, degree, t) >= least);
+    return this.distinct(turns).filter((t) => horner(sum, degree, t) >= least);
   }
 
   /**
    * The ends, and the turning points that differ from what is beside them. A piece that levels out towards its end has
    * a multiple root of its slope there, which rounding moves: by 1e-8 of the piece where it is double, 1e-5 where triple.
    */
-  private distinct(turns: Float64Array): number[] {
-    const { degree } = this.curves;
-    const rounding = ROUNDING * this.size;
-    const valueAt = (t: number) => horner(this.sum, degree, t);
+  private distinct(turns: number): number[] {
     const kept = [0];
-    for (const t of turns) if (Math.abs(valueAt(t) - valueAt(kept.at(-1)!)) > rounding) kept.push(t);
-    while (kept.length > 1 && Math.abs(valueAt(kept.at(-1)!) - valueAt(1)) <= rounding) kept.pop();
-    return [...kept, 1];
+    for (let i = 0; i < turns; i++) {
+      const t = this.roots.roots[i]!;
+      if (this.differ(t, kept.at(-1)!)) kept.push(t);
+    }
+    while (kept.length > 1 && !this.differ(kept.at(-1)!, 1)) kept.pop();
+    kept.push(1);
+    return kept;
+  }
+
+  private differ(one: number, other: number): boolean {
+    const { degree } = this.curves;
+    const difference = horner(this.sum, degree, one) - horner(this.sum, degree, other);
+    return Math.abs(difference) > ROUNDING * this.size;
   }
 
   /** Without repeats: breaks as they are, turning points only where no other position is so near. */

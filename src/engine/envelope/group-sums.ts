@@ -5,9 +5,11 @@ import type { Cases, Sense } from './cases';
  * summed by their sign, once for all factors. Where no span carries two groups, the bounds are the values.
  */
 export class GroupSums {
-  /** Of row r and group g at r·groups + g: the spans' values above nothing, and below; of what always acts all in both. */
-  private positive = new Float64Array(0);
-  private negative = new Float64Array(0);
+  /**
+   * Of row r and group g at 2·(r·groups + g): the spans' values above nothing, and next to it below; of what always acts
+   * all in both.
+   */
+  private sums = new Float64Array(0);
   /** The least and the greatest factor of each group in the combinations that `over` was told. */
   private readonly smallest: Float64Array;
   private readonly largest: Float64Array;
@@ -22,26 +24,29 @@ export class GroupSums {
   read(values: Float64Array, rows: number): void {
     const { count, groups, groupOf, starts } = this.cases;
     const always = starts[1]!;
-    this.clear(rows * groups);
-    const { positive, negative } = this;
+    const size = 2 * rows * groups;
+    if (this.sums.length < size) this.sums = new Float64Array(size);
+    const { sums } = this;
+    for (let n = 0; n < size; n++) sums[n] = 0;
     for (let row = 0; row < rows; row++) {
       for (let i = 0; i < count; i++) {
         const value = values[row * count + i]!;
-        const sum = row * groups + groupOf[i]!;
-        if (i < always || value > 0) positive[sum]! += value;
-        if (i < always || value < 0) negative[sum]! += value;
+        const above = 2 * (row * groups + groupOf[i]!);
+        if (i < always || value > 0) sums[above]! += value;
+        if (i < always || value < 0) sums[above + 1]! += value;
       }
     }
   }
 
   /** The most that sense · envelope of a combination can be by a row. */
   bound(row: number, combination: number, sense: Sense): number {
-    const { positive, negative } = this;
+    const { sums } = this;
     const { groups, groupFactors } = this.cases;
     let most = 0;
     for (let g = 0; g < groups; g++) {
       const factor = sense * groupFactors[combination * groups + g]!;
-      most += Math.max(factor * positive[row * groups + g]!, factor * negative[row * groups + g]!);
+      const above = 2 * (row * groups + g);
+      most += Math.max(factor * sums[above]!, factor * sums[above + 1]!);
     }
     return most;
   }
@@ -63,25 +68,17 @@ export class GroupSums {
 
   /** The most that sense · envelope of any of the combinations can be by a row: as if each group had any factor of theirs. */
   boundOfAll(row: number, sense: Sense): number {
-    const { positive, negative, smallest, largest } = this;
+    const { sums, smallest, largest } = this;
     const { groups } = this.cases;
     let most = 0;
     for (let g = 0; g < groups; g++) {
-      const up = sense * positive[row * groups + g]!;
-      const down = sense * negative[row * groups + g]!;
+      const above = 2 * (row * groups + g);
+      const up = sense * sums[above]!;
+      const down = sense * sums[above + 1]!;
       const least = smallest[g]!;
       const greatest = largest[g]!;
       most += Math.max(least * up, least * down, greatest * up, greatest * down);
     }
     return most;
-  }
-
-  private clear(size: number): void {
-    if (this.positive.length < size) {
-      this.positive = new Float64Array(size);
-      this.negative = new Float64Array(size);
-    }
-    this.positive.fill(0, 0, size);
-    this.negative.fill(0, 0, size);
   }
 }

@@ -43,11 +43,13 @@ export class SuperposedBeam {
     const search = new ExtremeSearch(adverse);
     const governing = new GoverningSearch(adverse);
     const extremes = byQuantity((quantity) => extremesOf(search, this.curves[quantity], combinations));
-    const readers = byQuantity(
-      (quantity) => new StationReader(this.curves[quantity], governing, magnitudeOf(extremes[quantity])),
-    );
+    const reader = new StationReader(governing, this.sources.length);
+    const sizes = byQuantity((quantity) => magnitudeOf(extremes[quantity]));
+    const read = (quantity: Quantity, x: number) => reader.read(this.curves[quantity], x, sizes[quantity]);
     return {
-      stations: positions.map((x) => stationAt(readers, x)),
+      stations: positions.map(
+        (x): EnvelopeStation => ({ x: x + 0, ...byQuantity((quantity) => read(quantity, x)) }),
+      ),
       extremes,
       reactions: this.reactions.envelope(governing),
     };
@@ -130,11 +132,3 @@ const named = (
 
 const magnitudeOf = ({ max, min }: Range<{ value: number }>): number =>
   Math.max(Math.abs(max.value), Math.abs(min.value));
-
-const stationAt = (readers: Record<Quantity, StationReader>, x: number): EnvelopeStation => ({
-  x: x + 0,
-  shear: readers.shear.at(x),
-  moment: readers.moment.at(x),
-  slope: readers.slope.at(x),
-  deflection: readers.deflection.at(x),
-});

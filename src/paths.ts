@@ -29,6 +29,10 @@ export const paths = {
   libraryDraft: (kind: string, slug: string, number: number) =>
     `/library/${kind}/${encodeURIComponent(slug)}/drafts/${number}`,
   newDocument: '/library/new',
+  imports: '/library/imports',
+  import: (id: string) => `/library/imports/${encodeURIComponent(id)}`,
+  /** What was found in a file and what became of it, for print. */
+  importReport: (id: string) => `/library/imports/${encodeURIComponent(id)}/report`,
   recall: (id: string) => `/library/recalls/${encodeURIComponent(id)}`,
   request: (number: number) => `/library/requests/${number}`,
   /** The form for a request, with the screen that it is raised from. */
@@ -77,6 +81,9 @@ export const paths = {
     audit: '/api/v1/audit',
     auditExport: '/api/v1/audit/export',
     sections: '/api/v1/sections',
+    imports: '/api/v1/imports',
+    import: (id: string) => `/api/v1/imports/${encodeURIComponent(id)}`,
+    search: '/api/v1/search',
     jobs: '/api/v1/jobs',
     job: (number: string) => `/api/v1/jobs/${encodeURIComponent(number)}`,
     members: (number: string) => `/api/v1/jobs/${encodeURIComponent(number)}/members`,

@@ -17,6 +17,7 @@ import {
   type DocumentRow,
   findDocument,
   otherRevisions,
+  type RevisionRow,
   requireRevision,
   requireRevisionById,
 } from './rows.server';
@@ -99,6 +100,19 @@ async function nameNew(tx: Tx, practiceId: string, key: DocumentKey, given: Writ
 const NOBODY: Pick<DocumentRow, 'id'> = { id: '00000000-0000-0000-0000-000000000000' };
 
 /** The document is locked by now: of two drafts begun at once, the second is told of the first. */
+export async function requireOnlyDraft(tx: Tx, practiceId: string, made: DraftKey): Promise<RevisionRow[]> {
+  const others = await otherRevisions(tx, practiceId, made.documentId, made.revisionId);
+  const open = others.find(
+    ({ state, abandonedAt }) => state === 'in_review' || (state === 'draft' && abandonedAt === null),
+  );
+  if (!open) return others;
+  const names = await namesOf(tx, [open.authorId]);
+  throw new AppError(
+    'conflict',
+    `Revision ${open.number} of ${open.of.reference} is ${stateName(open.state)} by ${names.get(open.authorId)} already. Go on with that one.`,
+  );
+}
+
 async function refuseSecond(
   tx: Tx,
   practiceId: string,
@@ -106,17 +120,7 @@ async function refuseSecond(
   made: DraftKey,
   { continues }: Start,
 ): Promise<void> {
-  const others = await otherRevisions(tx, practiceId, made.documentId, made.revisionId);
-  const open = others.find(
-    ({ state, abandonedAt }) => state === 'in_review' || (state === 'draft' && abandonedAt === null),
-  );
-  if (open) {
-    const names = await namesOf(tx, [open.authorId]);
-    throw new AppError(
-      'conflict',
-      `Revision ${open.number} of ${open.of.reference} is ${stateName(open.state)} by ${names.get(open.authorId)} already. Go on with that one.`,
-    );
-  }
+  const others = await requireOnlyDraft(tx, practiceId, made);
   if (continues || others.every(({ abandonedAt }) => abandonedAt !== null)) return;
   throw new AppError(
     'conflict',

@@ -251,10 +251,17 @@ async function documentFaults(tx: Tx, current: RevisionRow): Promise<Fault[]> {
   const reference = referenceIn(Object(current.body));
   const isTaken =
     reference !== null && (await isReferenceTaken(tx, current.practiceId, reference, current.of));
+  if (current.of.kind === 'section-table' && unfinishedOf(current.body)) return [ROWS_ARE_WRITTEN];
   const faults = unfinishedOf(current.body) ? await faultsOf(tx, current) : [];
   const all = isTaken && faults.length === 0 ? [referenceTaken(reference)] : faults;
   return all.map((fault) => ({ ...fault, pointer: `/document${fault.pointer}` }));
 }
+
+const ROWS_ARE_WRITTEN: Fault = {
+  pointer: '/document',
+  code: 'unfinished',
+  message: 'Its rows are still being written. Wait until its import is done.',
+};
 
 /** Loaded when it is needed: it brings the expression parser, which a start of the demo does without. */
 async function faultsOf(tx: Tx, current: RevisionRow): Promise<Fault[]> {

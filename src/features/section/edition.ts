@@ -11,6 +11,11 @@ export const editionDocument = z.object({
   notes: z.array(z.string()),
   axes: z.enum(['en', 'us', 'british']).optional(),
   rows: z.int(),
+  catalogue_date: z.iso.date().optional(),
+  supplier: z.string().optional(),
+  /** The import that the edition was made by: its file, and the report that stays with it. */
+  import: z.object({ id: z.uuid(), file: z.string(), sha256: z.string() }).optional(),
+  source_document: z.object({ file: z.string(), sha256: z.string() }).optional(),
 });
 
 /** An edition of a section table as its title block and its provenance show it. */

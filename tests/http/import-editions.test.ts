@@ -1,0 +1,112 @@
+import { readFileSync } from 'node:fs';
+import { beforeAll, describe, expect, test } from 'vitest';
+import { withPractice } from '@/db/tenancy';
+import { keepUnfinished } from '@/features/review/draft';
+import { createDraft, takeStep } from '@/features/review/review.server';
+import { editionBody, fillEdition, storedRowsHash } from '@/features/section/edition.server';
+import { readSectionTable } from '@/features/section/import';
+import { type SectionRow, sectionTableMetaSchema } from '@/features/section/section';
+import { ask, signInAs } from '../support/app';
+import { refusal } from '../support/database';
+import { issueSections } from '../support/library';
+import { foundPractice, type Member, PASSWORD } from '../support/practice';
+
+const SLUG = 'european-i';
+const read = (file: string) => readFileSync(`data/sections/${SLUG}.${file}`, 'utf8');
+const meta = sectionTableMetaSchema.parse(JSON.parse(read('json')));
+const { rows } = readSectionTable(read('csv'), meta);
+
+let librarian: Member;
+let checker: Member;
+let cookie: string;
+
+beforeAll(async () => {
+  [librarian, checker] = await foundPractice(['librarian'], ['checker']);
+  await issueSections({ author: librarian, reviewer: checker }, SLUG);
+  cookie = await signInAs(librarian.email, PASSWORD);
+});
+
+const draft = (body: object, of: readonly SectionRow[]) =>
+  withPractice(librarian, async (tx) => {
+    const key = await createDraft(tx, librarian, {
+      kind: 'section-table',
+      slug: SLUG,
+      reference: meta.reference,
+      name: meta.name,
+      body,
+      schemaVersion: 1,
+      changeNote: 'Next catalogue.',
+      changeClass: 'improvement',
+      consequence: 'service',
+    });
+    await fillEdition(tx, { practiceId: librarian.practiceId, revisionId: key.revisionId, table: SLUG }, of);
+    return key;
+  });
+
+/** The table without its first section, its second heavier by a tenth, and one more. */
+function nextRows(): SectionRow[] {
+  const [, second, third, ...rest] = rows;
+  if (!second || !third) throw new Error('The shipped table has rows');
+  const more = { ...third, designation: 'IPE 999', printed: 'IPE 999', key: 'ipe999' };
+  return [{ ...second, mass_kg_m: 1.1 * second.mass_kg_m }, third, ...rest, more];
+}
+
+describe('an edition of a section table', () => {
+  test('tells row by row what it changes against the one before', async () => {
+    await draft(editionBody(meta, nextRows()), nextRows());
+    const { status, json } = await ask('GET', `/api/v1/sections/${SLUG}/changes?from=1&to=2`, { cookie });
+    expect(status).toBe(200);
+    expect(json.counts).toEqual({ changed: 1, added: 1, removed: 1, same: rows.length - 2 });
+    expect(json.items).toEqual([
+      {
+        designation: rows[1]?.designation,
+        what: 'changed',
+        values: [
+          {
+            column: 'mass_kg_m',
+            from: rows[1]?.mass_kg_m,
+            to: 1.1 * (rows[1]?.mass_kg_m ?? 0),
+            share: expect.closeTo(0.1, 9),
+          },
+        ],
+        dimensions: false,
+        members: 0,
+      },
+    ]);
+    const added = await ask('GET', `/api/v1/sections/${SLUG}/changes?from=1&to=2&what=added`, { cookie });
+    expect(added.json.items.map(({ designation }: { designation: string }) => designation)).toEqual([
+      'IPE 999',
+    ]);
+    const removed = await ask('GET', `/api/v1/sections/${SLUG}/changes?from=1&to=2&what=removed`, { cookie });
+    expect(removed.json.items[0].designation).toBe(rows[0]?.designation);
+  });
+
+  test('names its rows by a hash that the stored rows have as well', async () => {
+    const { revisionId } = await draft(keepUnfinished({}), rows);
+    const stored = await withPractice(librarian, (tx) =>
+      storedRowsHash(tx, librarian.practiceId, revisionId),
+    );
+    const { rows: count, rows_sha256: sha256 } = editionBody(meta, rows);
+    expect(stored).toEqual({ count, sha256 });
+    expect(editionBody(meta, nextRows()).rows_sha256).not.toBe(sha256);
+  });
+
+  test('cannot be sent to review while its rows are being written', async () => {
+    const { revisionId } = await draft(keepUnfinished({}), rows.slice(0, 3));
+    await expect(takeStep(librarian, revisionId, { step: 'submit' })).rejects.toMatchObject({
+      status: 422,
+      message: 'Its rows are still being written. Wait until its import is done.',
+    });
+  });
+
+  test('is frozen once it is in review', async () => {
+    const { revisionId } = await draft(editionBody(meta, rows), rows);
+    await takeStep(librarian, revisionId, { step: 'submit' });
+    const more = nextRows().slice(-1);
+    const { practiceId } = librarian;
+    const write = withPractice(librarian, (tx) =>
+      fillEdition(tx, { practiceId, revisionId, table: SLUG }, more),
+    );
+    expect(await refusal(write)).toBe('PL001');
+  });
+});

@@ -63,7 +63,7 @@ function countIn({ beam, patterning }: SheetInput['result']) {
 const standingText = ({ groups, arrangements }: SheetInput['result']['patterning']): string =>
   groups.length === 0
     ? 'Every group stands on its whole length in every combination.'
-    : `${arrangements} arrangements in all. Of each force, moment, reaction and deflection the adverse spans are loaded and no others; ${groups.length > 1 ? `${groups.join(' and ')} load the same spans together. ` : ''}Spans run between vertical supports, overhangs are spans of their own.`;
+    : `${arrangements} arrangements in all. Of each force, moment, reaction and deflection the adverse spans are loaded and no others${groups.length > 1 ? `; ${groups.join(' and ')} load the same spans together` : ''}. Spans run between vertical supports, overhangs are spans of their own.`;
 
 function groupTable(
   { result, patterns }: SheetInput,

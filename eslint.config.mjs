@@ -45,7 +45,7 @@ const zones = [
     message: 'lib must make sense in any project',
   },
   {
-    target: './src/features/*/!(*.server|*.server.test|*.api).ts',
+    target: './src/features/*/!(*.server|*.server.test|*.api|*.client).ts',
     from: ['./src/{db,http,services,components}/**', './src/features/*/*.server.ts'],
     message: 'A pure feature file takes values and returns values',
   },
@@ -65,7 +65,7 @@ const zones = [
     message: 'Components know no feature and no database',
   },
   {
-    target: './src/features/*/*.tsx',
+    target: ['./src/features/*/*.tsx', './src/features/*/*.client.ts'],
     from: ['./src/{db,http,services}/**', './src/features/*/*.server.ts'],
     message: "An island runs in the browser: use the feature's x.api.ts",
   },

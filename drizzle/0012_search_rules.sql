@@ -55,7 +55,7 @@ DECLARE
 	by_template record;
 BEGIN
 	SELECT number, name INTO of_job FROM job WHERE practice_id = m.practice_id AND id = m.job_id;
-	SELECT designation, concat_ws(' ', designation, designation_key, regexp_replace(designation_key, '^[a-z]+', '')) AS said
+	SELECT designation, concat_ws(' ', designation, search_key(designation_key), search_key(regexp_replace(designation_key, '^[a-z]+', ''))) AS said
 		INTO made_of FROM section WHERE practice_id = m.practice_id AND id = m.section_id;
 	SELECT concat_ws(' ', d.reference, d.name, r.body ->> 'arrangement') AS said INTO by_template
 		FROM revision r JOIN document d ON d.practice_id = r.practice_id AND d.id = r.document_id

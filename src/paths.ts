@@ -6,6 +6,9 @@ export const paths = {
   refused: '/refused',
   account: '/account',
   notices: '/notices',
+  /** All that answers; with a kind, only of it. */
+  search: (q: string, kind?: string) => `/search?${new URLSearchParams({ q, ...(kind && { kind }) })}`,
+  searchPage: '/search',
   /** Of the demo: the e-mails that were caught. */
   demoMail: '/demo-mail',
   templates: '/templates',

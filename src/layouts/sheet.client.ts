@@ -1,19 +1,10 @@
 import { createKeyReader, takesTyping } from '@/components/ui/keys';
 import { takeLanding } from '@/components/ui/landing';
 import { keysAreOn } from '@/components/ui/use-keys';
+import { goToZone } from '@/components/ui/zone';
 
-const RING_MS = 600;
 const YEAR_S = 31_536_000;
 const SHARE_IN_VIEW = 0.35; // of the title block; with less of it the title strip stands in
-
-function goToZone(letter: string) {
-  const zone = document.querySelector<HTMLElement>(`[data-zone="${letter}"]`);
-  if (!zone) return;
-  zone.scrollIntoView({ block: 'start', behavior: 'instant' });
-  zone.focus({ preventScroll: true });
-  zone.dataset['ringed'] = '';
-  setTimeout(() => delete zone.dataset['ringed'], RING_MS);
-}
 
 function openKeys() {
   document.querySelector<HTMLDialogElement>('dialog[data-keys-list]')?.showModal();
@@ -30,11 +21,11 @@ function listenForKeys() {
       goToZone(press.letter);
     } else if (press?.key === '?') {
       openKeys();
-    } else if (press?.key === '/') {
-      const search = document.querySelector<HTMLElement>('[data-search]');
-      if (!search) return;
+    } else if (press?.key === 'f') {
+      const filter = document.querySelector<HTMLElement>('[data-search]');
+      if (!filter) return;
       event.preventDefault();
-      search.focus();
+      filter.focus();
     }
   });
   for (const button of document.querySelectorAll('[data-open-keys]'))

@@ -152,17 +152,36 @@ function after(place: SectionPlace, { grade, value, falls }: ReturnType<typeof o
     (${placeGrade}::int, ${placeValue ?? 'Infinity'}::float8, ${familyOf(at)}, ${sizesOf(at)}, ${table}::text)`;
 }
 
-/** One page of the rows of issued editions that answer a query, after a place in the list. */
+interface Page {
+  readonly place: SectionPlace | null;
+  readonly limit: number;
+}
+
+/** One page of the rows of issued editions that answer a query, after a place in the list; else the nearest. */
 export async function searchRows(
   tx: Tx,
   practiceId: string,
   query: SectionQuery,
-  { place, limit }: { readonly place: SectionPlace | null; readonly limit: number },
+  page: Page,
+): Promise<Found> {
+  const found = await namedRows(tx, practiceId, query, page);
+  if (found.total > 0 || query.q === '' || (await isCalled(tx, practiceId, rankOf(query.q)))) return found;
+  return nearest(tx, issuedRows(practiceId, query), query.q, page.limit);
+}
+
+const issuedRows = (practiceId: string, query: SectionQuery): SQL | undefined =>
+  and(eq(section.practiceId, practiceId), eq(revision.state, 'issued'), ...conditions(query));
+
+/** The same, and none where no section is called so. */
+export async function namedRows(
+  tx: Tx,
+  practiceId: string,
+  query: SectionQuery,
+  { place, limit }: Page,
 ): Promise<Found> {
   const rank = rankOf(query.q);
   const order = orderOf(query, rank);
-  const met = and(eq(section.practiceId, practiceId), eq(revision.state, 'issued'), ...conditions(query));
-  const where = and(met, query.q === '' ? undefined : sql`${rank} is not null`);
+  const where = and(issuedRows(practiceId, query), query.q === '' ? undefined : sql`${rank} is not null`);
   const [[counted], rows] = await Promise.all([
     tx
       .select({ total: count() })
@@ -174,16 +193,17 @@ export async function searchRows(
       .where(where),
     pageOf(tx, place ? and(where, after(place, order)) : where, order, limit + 1),
   ]);
-  const total = counted?.total ?? 0;
-  if (total === 0 && query.q !== '' && !(await isCalled(tx, practiceId, rank)))
-    return nearest(tx, met, query.q, limit);
   const shown = rows.slice(0, limit);
   const last = shown.at(-1);
   const next =
     rows.length > limit && last
       ? ([last.grade, Number.isFinite(last.value) ? last.value : null, last.key, last.table] as const)
       : null;
-  return { items: shown.map(({ grade: _g, value: _v, key: _k, ...row }) => toItem(row)), next, total };
+  return {
+    items: shown.map(({ grade: _g, value: _v, key: _k, ...row }) => toItem(row)),
+    next,
+    total: counted?.total ?? 0,
+  };
 }
 
 /** Whether any section is called so, whatever else is asked of it. */

@@ -28,7 +28,7 @@ export interface Match<T> {
 }
 
 /** What people type for what a name says. */
-const SHORT: Readonly<Record<string, string>> = {
+export const SHORT_WORDS: Readonly<Record<string, string>> = {
   udl: 'uniform',
   pt: 'point',
   ss: 'simple',
@@ -64,7 +64,7 @@ export function createFinder<T extends Searchable>(entries: readonly T[]) {
   const fuse = new Fuse(vocabulary, { threshold: TYPOS, ignoreLocation: true, includeScore: true });
 
   const meantBy = (typed: string): ReadonlyMap<string, number> => {
-    const asked = SHORT[typed] ?? typed;
+    const asked = SHORT_WORDS[typed] ?? typed;
     if (asked.length < SHORTEST_FUZZY)
       return new Map(vocabulary.filter((word) => word.startsWith(asked)).map((word) => [word, 0]));
     const found = fuse.search(asked).map(({ item, score = 0 }) => [item, score] as const);

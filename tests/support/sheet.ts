@@ -31,22 +31,23 @@ export const TEMPLATE: SheetInput['template'] = {
   parameters: [],
 };
 
-/** A sheet of a member as it is stored, of which nothing is recorded but what is asked for. */
-export const sheetOf = ({ input, ...solved }: Asked): SheetBlock[] =>
-  buildSheet({
-    system: 'metric',
-    purpose: 'Carries the roof.',
-    basis: '',
-    template: TEMPLATE,
-    parameters: {},
-    ownWeight: { acts: false, reason: 'Counted with the floor' },
-    patterns: { act: true, reason: '' },
-    section: null,
-    criteria: null,
-    cautions: [],
-    ...input,
-    result: resultOf(solved),
-  });
+/** A member as it is stored, of which nothing is recorded but what is asked for. */
+export const memberOf = ({ input, ...solved }: Asked): SheetInput => ({
+  system: 'metric',
+  purpose: 'Carries the roof.',
+  basis: '',
+  template: TEMPLATE,
+  parameters: {},
+  ownWeight: { acts: false, reason: 'Counted with the floor' },
+  patterns: { act: true, reason: '' },
+  section: null,
+  criteria: null,
+  cautions: [],
+  ...input,
+  result: resultOf(solved),
+});
+
+export const sheetOf = (asked: Asked): SheetBlock[] => buildSheet(memberOf(asked));
 
 function resultOf({ beam: given, combinations = [], patterned = [], result }: Omit<Asked, 'input'>): Result {
   const reading = readBeam({ ...SPAN, ...given, horizontal: 'ignore' });

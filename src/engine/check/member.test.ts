@@ -108,6 +108,23 @@ describe('a simple span of 6 m, G 5 and Q 8 kN/m', () => {
     expect(imposed?.combination).toBe('Q');
   });
 
+  test('is held to the absolute cap where that is lower than its share of the span', () => {
+    const capped = (cap: number) => {
+      const deflection = steel.deflection.map((limit) => ({ ...limit, cap }));
+      const found = check([uniform(8000, 'Q')], 6, 0, { ...steel, deflection }).rows;
+      return found.find(({ title }) => title.startsWith('Deflection, imposed load'));
+    };
+    expect(capped(0.005)).toMatchObject({ title: 'Deflection, imposed load, cap', capacity: 0.005 });
+    expect(capped(0.005)?.symbols).toBe('\\delta \\le \\delta_{max}');
+    expect(capped(0.02)).toMatchObject({ title: 'Deflection, imposed load, L/360', capacity: 6 / 360 });
+  });
+
+  test('lifted, says so and is held to the same limit', () => {
+    const [row] = check([uniform(-8000, 'Q')]).rows.filter(({ title }) => title.includes('imposed load'));
+    expect(row?.place).toBe('span A–B, Q, upward');
+    expect(row?.demand).toBeCloseTo((5 * 8000 * 6 ** 4) / (384 * EI), 9);
+  });
+
   test('puts the governing check first and finds no uplift', () => {
     expect(rows.map(({ ratio }) => ratio)).toEqual(rows.map(({ ratio }) => ratio).sort((a, b) => b - a));
     expect(findings).toEqual([]);

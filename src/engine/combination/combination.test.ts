@@ -83,11 +83,14 @@ test('factored loads are those with a factor, each times it', () => {
     { kind: 'couple', at: 1, m: 10, group: 'Q' },
     { kind: 'curvature', from: 0, to: 1, kappa: 10, group: 'toString' },
     { kind: 'line', from: 0, to: 1, w0: 10, w1: 20, group: 'G' },
+    { kind: 'curvature', from: 0, to: 1, kappa: 4, group: 'G' },
+    { kind: 'point', at: 1, p: 10 },
   ];
   expect(factoredLoads(loads, { name: '1', factors: { G: 1.5, Q: -2 } })).toEqual([
     { kind: 'point', at: 1, p: 15, group: 'G' },
     { kind: 'couple', at: 1, m: -20, group: 'Q' },
     { kind: 'line', from: 0, to: 1, w0: 15, w1: 30, group: 'G' },
+    { kind: 'curvature', from: 0, to: 1, kappa: 6, group: 'G' },
   ]);
 });
 

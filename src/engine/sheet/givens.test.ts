@@ -99,6 +99,12 @@ describe('the givens', () => {
     ]);
   });
 
+  test('list the rows that the template begins with as its own', () => {
+    const rows = givens('simple-span-points-uniform', {}).filter(([name]) => /^Point loads/.test(name!));
+    expect(rows.length).toBeGreaterThan(0);
+    expect(new Set(rows.map((cells) => cells.at(-1)))).toEqual(new Set(['template']));
+  });
+
   test('give a load of one group no sum, and a group of the practice by its letter', () => {
     const rows = givens('simple-span-points-uniform', { w: { T: '2 kN/m' }, loads: [] });
     expect(rows[1]).toEqual(['Uniform load: T', 'w', '2', 'kN/m', '2 kN/m']);

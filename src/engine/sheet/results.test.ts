@@ -1,5 +1,5 @@
 import { describe, expect, test } from 'vitest';
-import { blocksOf, rowsIn, sheetOf, tableIn, textsIn } from '../../../tests/support/sheet';
+import { blocksOf, memberOf, rowsIn, sheetOf, tableIn, textsIn } from '../../../tests/support/sheet';
 import { solveBeam } from '../beam/index';
 import type { CheckRow, Pattern } from '../check/index';
 import type { Combination } from '../combination/index';
@@ -178,6 +178,21 @@ describe('results and reactions', () => {
       ['R_{A}', 'kN', '15.0', '0.0', '15.0'],
       ['R_{B}', 'kN', '15.0', '0.0', '15.0'],
     ]);
+  });
+
+  // wL²/8 = 45 kNm hogging at midspan, wL/2 = 30 kN, 5wL⁴/384EI = 8.4 mm up.
+  test('name the governing loads of the senses that there are: of a load that lifts, no sagging', () => {
+    const lift: Combination = { name: 'W', factors: { W: 1 } };
+    const given = { beam: { loads: [uniform(-10e3, 'W')] }, combinations: [lift] };
+    const [envelope] = memberOf(given).result.strength;
+    const service = [{ ...envelope!, limit: { name: 'Wind' } }];
+    expect(rowsIn(sheetOf({ ...given, result: { service } }), 'Governing loads')).toEqual([
+      ['Shear, most', '30.0', 'kN', '6.000', 'W'],
+      ['Shear, least', '−30.0', 'kN', '0.000', 'W'],
+      ['Hogging', '−45.0', 'kNm', '3.000', 'W'],
+      ['Deflection up', '−8.4', 'mm', '3.000', 'W'],
+    ]);
+    expect(tableIn(sheetOf({}), 'Governing loads')).toBeUndefined();
   });
 
   // wL/2 and wL²/12 of a beam built in at both ends; a guide holds its end's rotation and no force.

@@ -26,4 +26,4 @@ export {
   type Tabulated,
   type TabulatedName,
 } from './plausibility';
-export { sectionProperties } from './properties';
+export { type SectionProperties, sectionProperties } from './properties';

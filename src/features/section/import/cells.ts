@@ -1,92 +1,244 @@
-import { type DimensionName, readQuantity } from '@/engine/quantity';
-import type { ImportCode } from './fault';
+import { type DimensionName, readQuantity, unitFactor } from '@/engine/quantity';
+import type { Severity } from '@/engine/section';
+import type { Cause, DecimalMark, RuleNumber } from './contract';
 
-export type DecimalMark = '.' | ',';
+const MISSING = new Set(['', '-', '–', '—', '−', 'n/a', 'na', '#n/a', '#nv', 'nan', 'null', '.', '…', '...']);
 
-const MISSING = new Set(['', '-', '–', '—', '−', 'n/a', 'na', '#n/a', 'nan', 'null', '.', '…']);
-
-/** A cell without the spaces and the hidden apostrophe that spreadsheets leave. */
-export const cellText = (cell: string): string => cell.replaceAll('\ufeff', '').trim().replace(/^'/, '');
+/** A cell without byte order marks, outer blanks and the hidden apostrophe that spreadsheets leave. */
+export function cellText(cell: string): string {
+  const text = (cell.includes('\ufeff') ? cell.replaceAll('\ufeff', '') : cell).trim();
+  return text.startsWith("'") ? text.slice(1) : text;
+}
 
 export const isMissing = (text: string): boolean => MISSING.has(text.toLowerCase());
 
-const GROUP = String.raw`[ '\u00a0\u2009\u202f\u2019]`;
-const POINT = new RegExp(String.raw`^-?\d+(?:${GROUP}\d{3})*\.(\d{1,2}|\d{4,})$`);
-const COMMA = new RegExp(String.raw`^-?\d+(?:${GROUP}\d{3})*,(\d{1,2}|\d{4,})$`);
-const EITHER = /^-?[1-9]\d{0,2}[.,]\d{3}$/;
+/** What is odd about a cell; `value` is what it is read as all the same, SI, or null. */
+export type CellFault = {
+  rule: RuleNumber;
+  severity: Severity;
+  cause: Cause;
+  message: string;
+  value: number | null;
+  /** The cell as it should read. */
+  suggestion?: string;
+  expected?: string;
+};
 
-/**
- * The decimal mark of a file, by what most of its cells can only mean; a cell like "1,234" tells nothing. Null where
- * there are only such cells, or as many of one kind as of the other.
- */
-export function decimalMarkOf(cells: readonly string[]): DecimalMark | null {
-  const count = (pattern: RegExp) => cells.filter((cell) => pattern.test(cell)).length;
-  const [points, commas] = [count(POINT), count(COMMA)];
-  if (points !== commas) return points > commas ? '.' : ',';
-  const isOpen = points > 0 || cells.some((cell) => EITHER.test(cell) && cell.includes(','));
-  return isOpen ? null : '.';
-}
+export type CellColumn = { quantity: DimensionName; unit: string; scale: number };
 
-export type CellReading =
-  | { ok: true; value: number }
-  | { ok: false; code: ImportCode; message: string; expected?: string };
-
-const fail = (code: ImportCode, message: string, expected?: string): CellReading =>
-  expected === undefined ? { ok: false, code, message } : { ok: false, code, message, expected };
-
-const MONTH = /^\d{1,2}[-. /]?(jan|feb|mar|apr|may|mai|jun|jul|aug|sep|oct|okt|nov|dec|dez)/i;
-const ISO_DATE = /^\d{4}-\d{2}-\d{2}/;
+const MONTHS = ['jan', 'feb', 'mar', 'apr', 'may', 'jun', 'jul', 'aug', 'sep', 'oct', 'nov', 'dec'];
+const MONTH = /^(\d{1,2})[-. /]?(jan|feb|mar|mär|apr|may|mai|jun|jul|aug|sep|oct|okt|nov|dec|dez)/i;
+const MONTH_FIRST = /^(jan|feb|mar|apr|may|jun|jul|aug|sep|oct|nov|dec)[a-z]*[-. /](\d{1,2})$/i;
+const ISO_DATE = /^(?:\d{4}-\d{2}-\d{2}|\d{1,2}[./]\d{1,2}[./]\d{4})/;
 const ZERO_LETTER = /(?<=[\d.,])[oO]|[oO](?=[\d.,])/g;
-const ONE_LETTER = /(?<=[\d.,])[lI](?=[\d.,]|$)/g;
+const ONE_LETTER = /(?<=[\d.,])[lI](?=[\d.,]|$)|(?<=^)[lI](?=[\d.,])/g;
+const SPREADSHEET_ERROR = /^#(?:DIV\/0|REF|VALUE|NAME|NUM|NULL|WERT|BEZUG|ZAHL)[!?]/i;
+const FORMULA = /^[=@\t]|^[+-]\s*[a-z(]/i;
+// biome-ignore lint/suspicious/noControlCharactersInRegex: they are what is looked for
+const CONTROL = /[\u0000-\u0008\u000b\u000c\u000e-\u001f\u007f]/;
 
-/** The number with a point, its thousands removed; null where it goes against the file's decimal mark. */
-function plainNumber(text: string, mark: DecimalMark): string | null {
-  const other = mark === '.' ? ',' : '.';
-  const grouped = new RegExp(String.raw`(?<=\d)[${other}](?=\d{3}(?:\D|$))`, 'g');
-  const plain = text.replaceAll(grouped, '');
-  if (new RegExp(String.raw`\d[${other}]\d|^[${other}]\d`).test(plain)) return null;
-  return mark === ',' ? plain.replace(',', '.') : plain;
+export const isFormula = (text: string): boolean => FORMULA.test(text);
+export const hasControl = (text: string): boolean => CONTROL.test(text);
+
+function error(rule: RuleNumber, cause: Cause, message: string, suggestion?: string): CellFault {
+  const fault: CellFault = { rule, severity: 'error', cause, message, value: null };
+  return suggestion === undefined ? fault : { ...fault, suggestion, expected: suggestion };
 }
 
-/** A cell that spreadsheets, keyboards or people damage in known ways, named before it is read as a number. */
-function damage(text: string): CellReading | null {
-  if (/^[=@\t\r]/.test(text) || /^[+-]\s*[a-z]/i.test(text)) {
-    return fail('dangerous_text', 'The cell is a formula. Paste its value instead.');
-  }
-  if (MONTH.test(text) || ISO_DATE.test(text)) {
-    return fail(
-      'spreadsheet_damage',
-      'A spreadsheet has turned this into a date. Type the fraction again as text.',
+function dateFault(text: string): CellFault | null {
+  const day = MONTH.exec(text);
+  const first = MONTH_FIRST.exec(text);
+  if (!day && !first && !ISO_DATE.test(text)) return null;
+  const words = 'A spreadsheet has turned this into a date.';
+  const month = MONTHS.indexOf((day?.[2] ?? first?.[1] ?? '').slice(0, 3).toLowerCase()) + 1;
+  const fraction = month === 0 ? undefined : `${day?.[1] ?? first?.[2]}/${month}`;
+  const hint = fraction ? `It may have been ${fraction}.` : 'Look it up in the source.';
+  return error(34, 'date', `${words} ${hint}`, fraction);
+}
+
+/** A cell that can be no number, named for what has been done to it. */
+function damage(text: string): CellFault | null {
+  if (text.includes('\ufffd')) {
+    return error(
+      30,
+      'replacement_character',
+      'A character could not be read: the file has another encoding here.',
     );
   }
-  if (!/^[-\d.,'\s\u2009\u202fOolI]+$/.test(text)) return null;
-  const digits = text.replaceAll(ZERO_LETTER, '0').replaceAll(ONE_LETTER, '1');
-  if (digits === text) return null;
-  return fail(
-    'look_alike',
-    `A letter stands where a digit should. Read it as ${digits}, or correct it.`,
-    digits,
-  );
+  if (hasControl(text))
+    return error(38, 'control_character', 'The cell holds control characters. Type it again.');
+  if (FORMULA.test(text))
+    return error(38, 'formula', 'The cell is a formula; it is never worked out. Paste its value.');
+  if (SPREADSHEET_ERROR.test(text)) {
+    return error(
+      34,
+      'not_a_number',
+      'A spreadsheet could not work this cell out. Look the value up in the source.',
+    );
+  }
+  return dateFault(text);
 }
 
-/** One numeric cell in SI: its own unit if it has one, else the column's. */
-export function readCell(text: string, name: DimensionName, unit: string, mark: DecimalMark): CellReading {
+const SPACES = /[\u00a0\u2009\u202f]/g;
+
+/** Number part and unit of a cell; the unit is empty where it has none. */
+function partsOf(text: string): { digits: string; unit: string } {
+  const split = /^([-\d.,'\u2019\s/½¼¾⅛⅜⅝⅞⅓⅔OolI]*(?:[eE][+-]?\d+)?)\s*([a-zA-Z°"″].*)?$/.exec(text);
+  return split
+    ? { digits: (split[1] ?? '').trim(), unit: (split[2] ?? '').trim() }
+    : { digits: text, unit: '' };
+}
+
+const FRACTION = /[/½¼¾⅛⅜⅝⅞⅓⅔]/;
+
+/** Plain digits with a point, or what stands against the file's decimal mark or its thousands. */
+function plainNumber(digits: string, mark: DecimalMark): { plain: string; fault?: 'mark' | 'groups' } | null {
+  const other = mark === '.' ? ',' : '.';
+  const text = digits.replaceAll(SPACES, ' ').replaceAll('\u2019', "'");
+  const whole = text.split(mark)[0] ?? '';
+  const parts = text.split(mark);
+  if (parts.length > 2 && !text.includes(other)) {
+    return { plain: text.replaceAll(/[^-\d]/g, ''), fault: 'groups' };
+  }
+  if (parts.length > 2) return null;
+  const separators = new Set(whole.replaceAll(/[-\d]/g, ''));
+  const joined = (part: string) => part.replaceAll(/[^-\d]/g, '');
+  const plain = parts.length === 2 ? `${joined(whole)}.${parts[1]}` : joined(whole);
+  if (!/^-?\d*\.?\d*$/.test(plain) || !/\d/.test(plain)) return null;
+  if (separators.size === 0) return { plain };
+  const isGrouped = separators.size === 1 && /^-?\d{1,3}(?:[ ',.]\d{3})+$/.test(whole);
+  if (isGrouped) return { plain };
+  if (separators.has(other) && separators.size === 1 && whole.split(other).length === 2) {
+    return { plain: text.replace(other, '.').replaceAll(' ', ''), fault: 'mark' };
+  }
+  return { plain, fault: 'groups' };
+}
+
+const LARGEST = 1e15; // in the unit of any column: no section has such a value
+
+function readDigits(digits: string, scale: number, mark: DecimalMark): number | CellFault {
+  const read = plainNumber(digits, mark);
+  const number = Number(read?.plain ?? Number.NaN);
+  if (read === null || !Number.isFinite(number) || Math.abs(number) > LARGEST) {
+    return error(34, 'not_a_number', `"${digits.slice(0, 40)}" is not a number of a section. Correct it.`);
+  }
+  const value = Number((number * scale).toPrecision(15));
+  if (read.fault === 'mark') {
+    const words = mark === ',' ? 'a comma' : 'a point';
+    const suggestion = read.plain.replace('.', mark);
+    const message = `The file writes decimals with ${words}; this cell does not. It looks like ${suggestion}.`;
+    return error(28, 'decimal_mark', message, suggestion);
+  }
+  if (read.fault === 'groups') {
+    const suggestion = read.plain.replace('.', mark);
+    const message = `Thousands are parted in threes; here they are not. It is read as ${suggestion}.`;
+    return {
+      rule: 29,
+      severity: 'warning',
+      cause: 'thousands',
+      message,
+      value,
+      suggestion,
+      expected: suggestion,
+    };
+  }
+  return value;
+}
+
+function readFraction(text: string, column: CellColumn, scale: number): number | CellFault {
+  const reading = readQuantity(text, column.quantity, { unit: column.unit });
+  if (!reading.ok) return error(35, 'fraction', reading.message);
+  const multiplier = scale / unitScale(column.unit, column.quantity);
+  const value = reading.value * multiplier;
+  if (/in|ft|["″']/.test(text) || /in|ft/.test(column.unit)) return value;
+  const message = 'A fraction stands in a column that is not in inches. Look whether it is one.';
+  return { rule: 35, severity: 'warning', cause: 'fraction', message, value };
+}
+
+const scales = new Map<string, number>();
+/** SI value of one of the unit; NaN where it is none of the quantity. A pound per foot is a mass here. */
+export function unitScale(unit: string, quantity: DimensionName): number {
+  const key = `${quantity} ${unit}`;
+  const before = scales.get(key);
+  if (before !== undefined) return before;
+  const read = unitFactor(unit, quantity);
+  const scale = read.ok ? read.factor : Number.NaN;
+  if (scales.size < 1000) scales.set(key, scale);
+  return scale;
+}
+
+function readOddNumber(raw: string, text: string, column: CellColumn, mark: DecimalMark): number | CellFault {
   const damaged = damage(text);
   if (damaged) return damaged;
-  const plain = plainNumber(text, mark);
-  if (plain === null) {
-    const words = mark === ',' ? 'a comma' : 'a point';
-    return fail('decimal_mark', `The file writes decimals with ${words}; this cell does not.`);
+  const { digits, unit } = partsOf(text);
+  const scale = unit === '' ? column.scale : unitScale(unit, column.quantity);
+  if (FRACTION.test(digits) || (/["″']/.test(unit) && column.quantity === 'length')) {
+    return readFraction(text, column, column.scale);
   }
-  const reading = readQuantity(plain, name, { unit });
-  if (!reading.ok) return fail('not_a_number', reading.message);
-  return reading;
+  if (Number.isNaN(scale)) {
+    if (/^\d/.test(text) && unit !== '') {
+      return error(26, 'unit_unknown', `"${unit.slice(0, 20)}" is no unit of this column. Correct the cell.`);
+    }
+    return error(34, 'not_a_number', `"${text.slice(0, 40)}" is not a number. Correct it.`);
+  }
+  const repaired = digits.replaceAll(ZERO_LETTER, '0').replaceAll(ONE_LETTER, '1');
+  if (repaired !== digits) {
+    const read = readDigits(repaired, scale, mark);
+    if (typeof read !== 'number') return read;
+    const message = `A letter stands where a digit should. It is read as ${repaired}.`;
+    const base = { rule: 37, severity: 'warning', cause: 'letter_for_digit', message } as const;
+    return { ...base, value: read, suggestion: repaired, expected: repaired };
+  }
+  const power = /^([\d.,]+)[eE]([+-]?\d+)$/.exec(digits);
+  if (power) return readScientific(power[1] ?? '', Number(power[2]), scale, mark);
+  const value = readDigits(digits, scale, mark);
+  if (typeof value !== 'number' || !raw.trim().startsWith("'")) return value;
+  const message = 'A hidden apostrophe makes this number a text. It is read as the number.';
+  return { rule: 34, severity: 'warning', cause: 'hidden_apostrophe', message, value, suggestion: digits };
 }
+
+const CUT_FIGURES = 3; // "1.2E+03": what a narrow spreadsheet column leaves
+
+function readScientific(mantissa: string, exponent: number, scale: number, mark: DecimalMark) {
+  const value = readDigits(mantissa, scale * 10 ** exponent, mark);
+  if (typeof value !== 'number') return value;
+  if (exponent < CUT_FIGURES || mantissa.replaceAll(/\D/g, '').length > CUT_FIGURES) return value;
+  const message =
+    'A spreadsheet has written this with a power of ten and may have cut its figures. Compare the source.';
+  return { rule: 34, severity: 'warning', cause: 'scientific', message, value } satisfies CellFault;
+}
+
+const PLAIN = { '.': /^\d{1,12}(?:\.\d{1,12})?$/, ',': /^\d{1,12}(?:,\d{1,12})?$/ } as const;
+
+/** One numeric cell in SI, by its own unit if it has one, else by the column's; or what is odd about it. */
+export function readCell(raw: string, column: CellColumn, mark: DecimalMark): number | CellFault {
+  if (PLAIN[mark].test(raw)) {
+    return Number(
+      ((mark === ',' ? Number(raw.replace(',', '.')) : Number(raw)) * column.scale).toPrecision(15),
+    );
+  }
+  return readOddNumber(raw, cellText(raw), column, mark);
+}
+
+/** The unit that a cell carries itself; empty where it has none. */
+export const ownUnit = (text: string): string => {
+  const last = text.charCodeAt(text.length - 1);
+  return last >= 48 && last <= 57 && !/[a-z"]/i.test(text) ? '' : partsOf(cellText(text)).unit;
+};
 
 /** Half a unit of the last printed digit, in the unit of the cell: 0.05 for "26.0", 0.5 for "26". */
 export function halfDigit(text: string, mark: DecimalMark): number {
-  const decimals = text.split(mark)[1]?.match(/^\d+/)?.[0].length ?? 0;
-  return 0.5 * 10 ** -decimals;
+  const at = text.indexOf(mark);
+  if (at < 0) return 0.5;
+  let decimals = 0;
+  for (let k = at + 1; k < text.length; k++) {
+    const code = text.charCodeAt(k);
+    if (code < 48 || code > 57) break;
+    decimals++;
+  }
+  const half = 0.5 * 10 ** -decimals;
+  const power = /[eE]([+-]?\d+)/.exec(text);
+  return power ? half * 10 ** Number(power[1]) : half;
 }
 
 /** Letters of other alphabets that look like those of a designation. */

@@ -1,8 +1,15 @@
 import { type DimensionName, unitFactor, unitText } from '@/engine/quantity';
 import type { SectionTableMeta } from '../section';
-import { cellText } from './cells';
 import { type ImportFault, isError, onColumn } from './fault';
-import { FIELD_QUANTITY, type Field, fieldOf, type Heading, isNumberField, readHeading } from './headings';
+import { cellText } from './old-cells';
+import {
+  FIELD_QUANTITY,
+  type Field,
+  fieldOf,
+  type Heading,
+  isNumberField,
+  readHeading,
+} from './old-headings';
 
 export type Column = Heading & { index: number; heading: string; field: Field };
 

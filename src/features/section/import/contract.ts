@@ -51,7 +51,8 @@ export type MappedColumn = {
 /** How a file is read. Remembered per supplier; `remember` puts it onto a new file of the same headings. */
 export type Mapping = {
   version: 1;
-  encoding: Encoding;
+  /** Null: to be asked. After an answer the file is recognised again with it, since headings may read otherwise. */
+  encoding: Encoding | null;
   delimiter: Delimiter;
   /** Null: to be asked. */
   decimalMark: DecimalMark | null;
@@ -156,6 +157,9 @@ export type Edit =
   | { kind: 'shift_row'; line: number; from: number; by: 1 | -1 }
   | { kind: 'drop_row'; line: number }
   | { kind: 'alias'; line: number; of: string }
+  /** Every cell of a group is read as its finding suggests; every row of it is left out. */
+  | { kind: 'take_every'; group: string }
+  | { kind: 'drop_every'; group: string }
   | { kind: 'set_cells_unit'; column: number; lines: readonly number[]; unit: string; factor: number };
 
 /** A change of the mapping: it touches every row. */
@@ -265,7 +269,8 @@ export type Cause =
   | 'name_size'
   | 'same_file'
   | 'many_changed'
-  | 'axes';
+  | 'density'
+  | 'tube_standard';
 
 /** What the first reading finds of the file as a whole; JSON, bounded but for the lines. */
 export type FileFacts = {
@@ -281,9 +286,18 @@ export type FileFacts = {
   counts: Readonly<Record<string, number>>;
   /** What the second reading multiplies a column by, so that one slip is not found in every row again. */
   corrections: { column: number; factor: number; lines: number[] | null }[];
+  /** Columns whose contents the second reading exchanges, for the same reason. */
+  swaps: [number, number][];
+  /** What the rows are judged by where the mapping says otherwise, for the same reason. */
+  assumed: Partial<Pick<Mapping, 'density' | 'tubeStandard'>>;
+  /** What the names of the sections carry, as most of them do. */
+  names: NameFacts;
   /** Lines that no row is made of: refused for a fault above, or said twice. */
   heldLines: number[];
 };
+
+/** Which of the sizes in the names is what: the first the depth, the last the mass, in the file's own units. */
+export type NameFacts = { mass: boolean; depth: boolean; sizes: boolean };
 
 export type CheckedRow = { line: number; row: SectionRow };
 /** `rowsDone` counts from the start of the file: where to go on from. */
@@ -313,7 +327,8 @@ export type FileIdentity = Pick<FileFacts, 'rowCount' | 'columnSums'> & {
   date: string;
 };
 
-export type RecognisedFile = { name: string; size: number };
+/** `encoding`: the answer to an encoding that had to be asked. */
+export type RecognisedFile = { name: string; size: number; encoding?: Encoding };
 export type Recognise = (head: Uint8Array, file: RecognisedFile) => Recognition;
 /** `head`: the first `RECOGNISED_BYTES` (64 KB) of the file, or all of it. */
 export const RECOGNISED_BYTES = 64 * 1024;

@@ -1,6 +1,6 @@
 import Papa from 'papaparse';
-import { cellText } from './cells';
 import { type ImportFault, onLine } from './fault';
+import { cellText } from './old-cells';
 
 export type FileLine = { number: number; cells: string[] };
 

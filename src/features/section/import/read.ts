@@ -1,9 +1,9 @@
 import type { SectionRow, SectionTableMeta } from '../section';
-import { cellText, type DecimalMark, decimalMarkOf, isMissing } from './cells';
 import { type Column, readColumns } from './columns';
 import { type ImportFault, isError, onLine } from './fault';
-import { isNumberField, isUnit } from './headings';
 import { asideOf, type FileLine, filled, linesOf } from './lines';
+import { cellText, type DecimalMark, decimalMarkOf, isMissing } from './old-cells';
+import { isNumberField, isUnit } from './old-headings';
 import { readFittedRow } from './shift';
 
 /** `rows` are those without an error. `faults` of a table that is read are warnings and notes. */

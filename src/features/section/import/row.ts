@@ -17,10 +17,10 @@ import {
   widthOf,
 } from '@/engine/section';
 import type { SectionRow, SectionTableMeta } from '../section';
-import { halfDigit } from './cells';
 import type { Column } from './columns';
 import { type ImportFault, isError } from './fault';
-import { isNumberField, type NumberField } from './headings';
+import { halfDigit } from './old-cells';
+import { isNumberField, type NumberField } from './old-headings';
 import {
   type Line,
   lineOf,

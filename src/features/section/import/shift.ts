@@ -1,6 +1,6 @@
-import { cellText } from './cells';
 import { isError, onLine } from './fault';
 import { type FileLine, filled } from './lines';
+import { cellText } from './old-cells';
 import { type RowReading, readRow } from './row';
 import type { RowContext } from './values';
 

@@ -1,9 +1,9 @@
 import { SECTION_SHAPES, type SectionShape } from '@/engine/section';
 import type { SectionTableMeta } from '../section';
-import { cellText, type DecimalMark, hasLookAlike, isMissing, readCell } from './cells';
 import type { Column } from './columns';
 import type { ImportFault } from './fault';
-import { FIELD_QUANTITY, type Field, isNumberField, type NumberField } from './headings';
+import { cellText, type DecimalMark, hasLookAlike, isMissing, readCell } from './old-cells';
+import { FIELD_QUANTITY, type Field, isNumberField, type NumberField } from './old-headings';
 
 export type RowContext = { columns: readonly Column[]; mark: DecimalMark; meta: SectionTableMeta };
 

@@ -1,0 +1,271 @@
+import { sectionProperties, TABULATED, type TabulatedName } from '@/engine/section';
+import type { FileFacts, Finding, Mapping, NumberField } from './contract';
+import { findingOf } from './finding';
+import { withUnit } from './judge';
+import { type ColumnFindings, columnOf, type NumberColumn, type Plan } from './plan';
+import { possible, type RowStore } from './row-store';
+import { sizeHypothesis } from './size-columns';
+import { type UnitSlip, unitSlip } from './slips';
+
+const FEW = 3; // rows, below which nothing is said of a column
+const MOST = 0.9; // of the rows: then the column is wrong, not the rows
+const SAME = 0.02; // spread of the rows about the median
+const SOME = 0.05; // of the rows, and FEW: a second unit in the column
+const OFF = 0.05; // of the median, by which a column is out without a unit that explains it
+const ROUGH: ReadonlySet<TabulatedName> = new Set(['j', 'iw']); // computed within 5 and 12 % only
+const ROUGHLY_OFF = 0.2;
+
+const TABULATED_NAMES = Object.keys(TABULATED) as TabulatedName[];
+
+const median = (sorted: Float64Array) => sorted[Math.floor(sorted.length / 2)] ?? Number.NaN;
+
+type Ratios = { rows: number[]; logs: Float64Array };
+
+/** Logarithms of tabulated over computed, for each property that the file has. */
+function ratiosOf(store: RowStore, mapping: Mapping, density: number): Map<TabulatedName, Ratios> {
+  const names = TABULATED_NAMES.filter((name) => store.fields.includes(name));
+  const rows = new Map(names.map((name) => [name, [] as number[]]));
+  const logs = new Map(names.map((name) => [name, [] as number[]]));
+  for (let at = 0; at < store.count; at++) {
+    const dimensions = possible(store, at, mapping);
+    if (!dimensions) continue;
+    const computed = sectionProperties(dimensions);
+    for (const name of names) {
+      const value = store.value(name, at);
+      const expected = name === 'mass' ? density * computed.area : computed[name];
+      if (!(value > 0) || !(expected > 0)) continue;
+      rows.get(name)?.push(at);
+      logs.get(name)?.push(Math.log(value / expected));
+    }
+  }
+  return new Map(
+    names.map((name) => [
+      name,
+      { rows: rows.get(name) ?? [], logs: Float64Array.from(logs.get(name) ?? []) },
+    ]),
+  );
+}
+
+/** What is wrong with whole columns, each once; the store is corrected for it as the second reading will be. */
+export function columnFindings(store: RowStore, mapping: Mapping, plan: Plan): ColumnFindings {
+  const sizes = sizeHypothesis(store, mapping, plan);
+  const found: ColumnFindings = {
+    ...sizes,
+    findings: [...sizes.findings],
+    corrections: [...sizes.corrections],
+  };
+  const swapped = swaps(store, plan);
+  found.findings.push(...swapped.findings);
+  found.swaps = [...found.swaps, ...swapped.swaps];
+  const judged = { ...mapping, ...found.assumed };
+  for (const [name, ratios] of ratiosOf(store, judged, judged.density)) {
+    const column = fieldColumn(plan, name, found.swaps);
+    if (column && ratios.rows.length >= FEW) judgeColumn(name, ratios, column, store, found, judged);
+  }
+  return found;
+}
+
+/** The column that holds a property once exchanged columns are put right. */
+function fieldColumn(plan: Plan, field: NumberField, swapped: FileFacts['swaps']): NumberColumn | undefined {
+  const own = columnOf(plan, field);
+  const swap = swapped.find((pair) => own !== undefined && pair.includes(own.index));
+  const other = swap?.find((index) => index !== own?.index);
+  return other === undefined ? own : plan.numbers.find(({ index }) => index === other);
+}
+
+function judgeColumn(
+  name: TabulatedName,
+  { rows, logs }: Ratios,
+  column: NumberColumn,
+  store: RowStore,
+  found: ColumnFindings,
+  mapping: Mapping,
+): void {
+  const middle = median(Float64Array.from(logs).sort());
+  const agreeing = logs.reduce((sum, log) => (Math.abs(log - middle) <= SAME ? sum + 1 : sum), 0);
+  const slip = unitSlip(Math.exp(middle), column);
+  const limit = ROUGH.has(name) ? ROUGHLY_OFF : OFF;
+  const isTogether =
+    agreeing >= MOST * logs.length || (slip !== null && agreeingWithin(logs, middle) >= MOST * logs.length);
+  if (isTogether && (slip || Math.abs(middle) > limit)) {
+    columnSlip(
+      { name, column, slip, ratio: Math.exp(middle), agreeing, of: logs.length },
+      store,
+      found,
+      mapping,
+    );
+    return;
+  }
+  mixedUnits(rows, logs, column, store, found);
+}
+
+const NEAR = 0.06; // where values of few figures scatter about a slip of units
+const agreeingWithin = (logs: Float64Array, middle: number) =>
+  logs.reduce((sum, log) => (Math.abs(log - middle) <= NEAR ? sum + 1 : sum), 0);
+
+type Slipped = {
+  name: TabulatedName;
+  column: NumberColumn;
+  slip: UnitSlip | null;
+  ratio: number;
+  agreeing: number;
+  of: number;
+};
+
+function columnSlip(
+  { name, column, slip, ratio, agreeing, of }: Slipped,
+  store: RowStore,
+  found: ColumnFindings,
+  mapping: Mapping,
+): void {
+  const { index, heading } = column;
+  const times = Number(ratio.toPrecision(3));
+  const formula = `median of given over computed is ${times}, in ${agreeing} of ${of} rows within 2 %`;
+  if (slip) {
+    const { unit, factor, words, message } = slip;
+    const edit = { kind: 'set_column_unit', column: index, unit: unit ?? column.unit, factor } as const;
+    const fixes = [{ label: `Read the column in ${words}`, reach: 'column', edit } as const];
+    const base = {
+      rule: 20,
+      severity: 'error',
+      cause: 'column_slip',
+      column: index,
+      heading,
+      formula,
+    } as const;
+    const said = `The whole column: ${message.charAt(0).toLowerCase()}${message.slice(1)}`;
+    found.findings.push(findingOf({ ...base, read: column.unit, expected: words, message: said, fixes }));
+    found.corrections.push({ column: index, factor: slip.correction, lines: null });
+    store.scale(column.field, slip.correction, null);
+    return;
+  }
+  if (name === 'mass') {
+    const value = Number((mapping.density * ratio).toPrecision(3));
+    const message = `The masses are those of a material of ${value} kg/m³, not of ${mapping.density}.`;
+    const fixes = [
+      { label: `Take ${value} kg/m³`, reach: 'file', edit: { kind: 'set_density', value } } as const,
+    ];
+    const base = { rule: 1, severity: 'warning', cause: 'density', column: index, heading, formula } as const;
+    found.findings.push(
+      findingOf({ ...base, read: String(mapping.density), expected: `${value} kg/m³`, message, fixes }),
+    );
+    found.assumed = { ...found.assumed, density: mapping.density * ratio };
+    return;
+  }
+  const message = `All rows give ${times} times what their sizes give. Look what the column holds, or leave it out.`;
+  const fixes = [
+    {
+      label: 'Leave the column out',
+      reach: 'column',
+      edit: { kind: 'leave_out_column', column: index },
+    } as const,
+  ];
+  const base = {
+    rule: 20,
+    severity: 'error',
+    cause: 'column_slip',
+    column: index,
+    heading,
+    formula,
+  } as const;
+  found.findings.push(findingOf({ ...base, read: `× ${times}`, expected: '× 1', message, fixes }));
+  found.corrections.push({ column: index, factor: 1 / ratio, lines: null });
+  store.scale(column.field, 1 / ratio, null);
+}
+
+const FAR = Math.log(1.3); // a factor between units is farther from 1 than any fault of rounding
+
+/** Clusters of rows a known factor away from the others. */
+function mixedUnits(
+  rows: readonly number[],
+  logs: Float64Array,
+  column: NumberColumn,
+  store: RowStore,
+  found: ColumnFindings,
+): void {
+  const clusters = new Map<string, { slip: UnitSlip; rows: number[] }>();
+  for (const [k, log] of logs.entries()) {
+    if (Math.abs(log) < FAR) continue;
+    const slip = unitSlip(Math.exp(log), column);
+    if (!slip) continue;
+    const cluster = clusters.get(slip.words) ?? { slip, rows: [] };
+    cluster.rows.push(rows[k] ?? 0);
+    clusters.set(slip.words, cluster);
+  }
+  for (const { slip, rows: members } of clusters.values()) {
+    if (members.length < Math.max(FEW, SOME * rows.length)) continue;
+    const lines = members.map((at) => store.lines[at] ?? 0);
+    const { unit, factor, words, correction } = slip;
+    const edit = {
+      kind: 'set_cells_unit',
+      column: column.index,
+      lines,
+      unit: unit ?? column.unit,
+      factor,
+    } as const;
+    const first = members[0] ?? 0;
+    const value = store.value(column.field, first);
+    found.findings.push(
+      findingOf({
+        rule: 27,
+        severity: 'error',
+        cause: 'mixed_units',
+        column: column.index,
+        heading: column.heading,
+        read: withUnit(value, column),
+        expected: withUnit(value * correction, column),
+        formula: `${members.length} of ${rows.length} rows fit when they are read in ${words}`,
+        message: `Two units in one column: ${members.length} rows, the first in line ${lines[0]}, look like ${words}.`,
+        fixes: [{ label: `Read these ${members.length} cells in ${words}`, reach: 'column', edit }],
+      }),
+    );
+    found.corrections.push({ column: column.index, factor: correction, lines });
+    store.scale(column.field, correction, members);
+  }
+}
+
+/** Pairs of columns that stand in each other's place in nearly every row. */
+function swaps(store: RowStore, plan: Plan): Pick<ColumnFindings, 'findings' | 'swaps'> {
+  const findings: Finding[] = [];
+  const swapped: [number, number][] = [];
+  const pairs = [
+    { one: 'wElMajor', other: 'wPlMajor', rule: 9, cause: 'moduli_swapped', words: 'W_pl is below W_el' },
+    { one: 'wElMinor', other: 'wPlMinor', rule: 9, cause: 'moduli_swapped', words: 'W_pl is below W_el' },
+    { one: 'iMajor', other: 'iMinor', rule: 6, cause: 'axes_swapped', words: 'I major is below I minor' },
+  ] as const;
+  for (const { one, other, rule, cause, words } of pairs) {
+    const [first, second] = [columnOf(plan, one), columnOf(plan, other)];
+    if (!first || !second) continue;
+    const { below, of } = countBelow(store, one, other);
+    if (of < FEW || below < MOST * of) continue;
+    const columns: [number, number] = [first.index, second.index];
+    const message = `The two columns look exchanged: ${words} in ${below} of ${of} rows. Look at the axis convention too.`;
+    const fixes = [
+      {
+        label: 'Exchange the two columns',
+        reach: 'column',
+        edit: { kind: 'swap_columns', columns },
+      } as const,
+    ];
+    const base = { rule, severity: 'error', cause, column: first.index, heading: first.heading } as const;
+    findings.push(
+      findingOf({ ...base, read: first.heading, expected: second.heading, formula: words, message, fixes }),
+    );
+    swapped.push(columns);
+    store.swap(one, other);
+  }
+  return { findings, swaps: swapped };
+}
+
+/** How many rows have `other` below `one` (moduli), or `one` below `other` (axes); equal values say nothing. */
+function countBelow(store: RowStore, one: NumberField, other: NumberField) {
+  let below = 0;
+  let of = 0;
+  for (let at = 0; at < store.count; at++) {
+    const [a, b] = [store.value(one, at), store.value(other, at)];
+    if (!(a > 0 && b > 0) || Math.abs(a / b - 1) < 0.01) continue;
+    of++;
+    if (one === 'iMajor' ? a < b : b < a) below++;
+  }
+  return { below, of };
+}

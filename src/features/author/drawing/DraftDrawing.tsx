@@ -1,6 +1,8 @@
 import { type ReactNode, useCallback, useMemo, useRef, useState } from 'react';
+import { flushSync } from 'react-dom';
 import { useWidth } from '@/components/drawing/use-width';
 import { Button } from '@/components/ui/Button';
+import type { Fault } from '@/engine/model';
 import type { UnitSystemName } from '@/engine/quantity';
 import type { Written } from '@/features/review/draft';
 import { useRestedValue } from '@/features/template/use-live';
@@ -12,12 +14,12 @@ import { PartBar } from './PartBar';
 import { isPlaceTool, LengthPicker, PlacePicker, type Tool } from './Placing';
 import { Preview } from './Preview';
 import { partMoves } from './part-moves';
-import { drawnOf } from './parts';
+import { drawnOf, type Part } from './parts';
 import { Releases } from './Releases';
-import { beamOf } from './releases';
-import { Stage } from './Stage';
+import { type BeamReading, beamOf } from './releases';
+import { focusParts, Stage } from './Stage';
 import { drawableTemplate, type Sketch, sketchAt } from './sketch';
-import { layStage } from './stage-layout';
+import { layStage, type StageLayout } from './stage-layout';
 import { type AnyTool, Tools, WHAT } from './Tools';
 import { ValueStrip } from './ValueStrip';
 
@@ -39,10 +41,11 @@ export function DraftDrawing({ editor, system = 'metric' }: DraftDrawingProps) {
       <summary className="flex min-h-44 cursor-pointer items-center font-semibold md:hidden">Drawing</summary>
       <div ref={host} className="grid min-w-0 gap-10 [&>*]:min-w-0">
         {!isNow && <NotDrawn editor={editor} hasSketch={sketch !== null} hasTemplate={template !== null} />}
-        <Board editor={editor} sketch={sketch} isNow={isNow} width={width} system={system} />
-        {template && template.parameters.length > 0 && (
-          <ValueStrip editor={editor} template={template} system={system} faults={valueFaults} />
-        )}
+        <Board editor={editor} sketch={sketch} isNow={isNow} width={width} system={system}>
+          {template && template.parameters.length > 0 && (
+            <ValueStrip editor={editor} template={template} system={system} faults={valueFaults} />
+          )}
+        </Board>
       </div>
     </details>
   );
@@ -110,10 +113,12 @@ interface BoardProps {
   readonly isNow: boolean;
   readonly width: number;
   readonly system: UnitSystemName;
+  /** The values that it is shown at. */
+  readonly children: ReactNode;
 }
 
 /** Tools, the drawing, and what is said of the chosen part and of the whole. */
-function Board({ editor, sketch, isNow, width, system }: BoardProps) {
+function Board({ editor, sketch, isNow, width, system, children }: BoardProps) {
   const [tool, setTool] = useState<Tool | null>(null);
   const { document, readOnly } = editor;
   const add = ({ edits, select }: Added) => {
@@ -132,6 +137,7 @@ function Board({ editor, sketch, isNow, width, system }: BoardProps) {
           onTake={setTool}
         />
       )}
+      {!sketch && children}
       {sketch && (
         <Drawing
           editor={editor}
@@ -142,7 +148,9 @@ function Board({ editor, sketch, isNow, width, system }: BoardProps) {
           tool={isNow ? tool : null}
           onAdd={add}
           onLeave={() => setTool(null)}
-        />
+        >
+          {children}
+        </Drawing>
       )}
     </>
   );
@@ -162,57 +170,84 @@ interface DrawingProps extends BoardProps {
   readonly onLeave: () => void;
 }
 
-function Drawing({ editor, sketch, isNow, width, system, tool, onAdd, onLeave }: DrawingProps) {
+function Drawing({ editor, sketch, isNow, width, system, tool, onAdd, onLeave, children }: DrawingProps) {
   const bar = useRef<HTMLDivElement>(null);
+  const stage = useRef<HTMLDivElement>(null);
   const drawn = useMemo(() => drawnOf(sketch), [sketch]);
   const layout = useMemo(() => layStage(drawn.beam, width), [drawn, width]);
   const reading = useMemo(() => beamOf(sketch), [sketch]);
-  const rested = useRestedValue(sketch);
   const moves = partMoves(editor, sketch);
   const part = drawn.parts.find(({ pointer }) => isPartOf(pointer, editor.selected));
   const motion = 'faults' in reading ? reading.faults.find((fault) => fault.motion)?.motion : undefined;
+  const remove = (gone: Part) => {
+    flushSync(() => moves.remove(gone));
+    focusParts(stage.current);
+  };
   const open = useCallback(
     () => requestAnimationFrame(() => bar.current?.querySelector<HTMLElement>('select, button')?.focus()),
     [],
   );
   return (
     <>
-      <Stage
-        drawn={drawn}
-        layout={layout}
-        selected={editor.selected}
-        motion={motion}
-        isLastGood={!isNow}
-        onSelect={editor.select}
-        onRemove={moves.remove}
-        onDrag={moves.drag}
-        onNudge={moves.nudge}
-        onOpen={open}
-      >
-        {tool && <Placing {...{ tool, sketch, layout, editor, onAdd, onLeave }} />}
-      </Stage>
+      <div ref={stage}>
+        <Stage
+          drawn={drawn}
+          layout={layout}
+          selected={editor.selected}
+          motion={motion}
+          isLastGood={!isNow}
+          onSelect={editor.select}
+          onRemove={moves.remove}
+          onDrag={moves.drag}
+          onNudge={moves.nudge}
+          onOpen={open}
+        >
+          {tool && <Placing {...{ tool, sketch, layout, editor, onAdd, onLeave }} />}
+        </Stage>
+      </div>
       <div ref={bar}>
-        {isNow && part && !tool && <PartBar editor={editor} sketch={sketch} part={part} />}
+        {isNow && part && !tool && (
+          <PartBar editor={editor} sketch={sketch} part={part} onRemove={() => remove(part)} />
+        )}
         {tool && <PlacingHelp tool={tool} onLeave={onLeave} />}
       </div>
-      {isNow && 'faults' in reading && (
-        <p className="font-semibold text-error" role="status">
-          {reading.faults.map(({ message }) => message).join(' ')}
-        </p>
-      )}
-      {isNow && 'beam' in reading && (
-        <>
-          <Named title="Released first">
-            <Releases editor={editor} sketch={sketch} beam={reading.beam} />
-          </Named>
-          <Named title="Moment and reactions">
-            <Preview sketch={rested} layout={layout} system={system} />
-          </Named>
-        </>
+      {children}
+      {isNow && (
+        <Findings editor={editor} sketch={sketch} reading={reading} layout={layout} system={system} />
       )}
     </>
   );
 }
+
+interface FindingsProps extends Pick<DrawingProps, 'editor' | 'sketch' | 'system'> {
+  readonly reading: BeamReading;
+  readonly layout: StageLayout;
+}
+
+/** What follows from the draft at these values: its releases, moments and reactions, or why it has none. */
+function Findings({ editor, sketch, reading, layout, system }: FindingsProps) {
+  const rested = useRestedValue(sketch);
+  if ('faults' in reading)
+    return (
+      <p className="font-semibold text-error" role="status">
+        {reading.faults.map(standingWords).join(' ')}
+      </p>
+    );
+  return (
+    <>
+      <Named title="Released first">
+        <Releases editor={editor} sketch={sketch} beam={reading.beam} />
+      </Named>
+      <Named title="Moment and reactions">
+        <Preview sketch={rested} layout={layout} system={system} />
+      </Named>
+    </>
+  );
+}
+
+/** A template's beam is always held sideways: it has no other way out. */
+const standingWords = ({ code, motion, message }: Fault): string =>
+  code === 'unstable' && !motion ? 'Nothing holds the beam sideways. Make one support a pin.' : message;
 
 const isPartOf = (part: string, selected: string | null): boolean =>
   selected === part || (selected?.startsWith(`${part}/`) ?? false);
@@ -228,7 +263,7 @@ function Named({ title, children }: { readonly title: string; readonly children:
 
 type PlacingProps = Pick<DrawingProps, 'sketch' | 'editor' | 'onAdd' | 'onLeave'> & {
   readonly tool: Tool;
-  readonly layout: ReturnType<typeof layStage>;
+  readonly layout: StageLayout;
 };
 
 function Placing({ tool, sketch, layout, editor, onAdd, onLeave }: PlacingProps) {

@@ -5,7 +5,6 @@ import {
   choiceOf,
   movedTo,
   type PlaceKey,
-  removal,
   SUPPORT_CHOICES,
   type SupportChoice,
   settlementEdits,
@@ -20,6 +19,7 @@ interface PartBarProps {
   readonly editor: EditorState;
   readonly sketch: Sketch;
   readonly part: Part;
+  readonly onRemove: () => void;
 }
 
 const SUPPORT_WORDS: Readonly<Record<SupportChoice, string>> = {
@@ -33,7 +33,7 @@ const SUPPORT_WORDS: Readonly<Record<SupportChoice, string>> = {
 };
 
 /** The chosen part: how it holds, where it stands, and taking it away. */
-export function PartBar({ editor, sketch, part }: PartBarProps) {
+export function PartBar({ editor, sketch, part, onRemove }: PartBarProps) {
   const { document, readOnly } = editor;
   const { pointer, kind, name } = part;
   const why = whyKept(document, pointer);
@@ -62,17 +62,11 @@ export function PartBar({ editor, sketch, part }: PartBarProps) {
           {settles ? 'Let it not settle' : 'Let it settle'}
         </Button>
       )}
-      <Button
-        size="small"
-        keyName={why === undefined ? 'Del' : undefined}
-        reason={why}
-        onClick={() => {
-          editor.select(null);
-          editor.edit(...removal(document, pointer));
-        }}
-      >
-        Remove
-      </Button>
+      {kind !== 'dimension' && (
+        <Button size="small" keyName={why === undefined ? 'Del' : undefined} reason={why} onClick={onRemove}>
+          Remove
+        </Button>
+      )}
     </fieldset>
   );
 }

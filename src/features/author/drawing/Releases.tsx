@@ -84,12 +84,14 @@ function useReleases({ editor, sketch, beam }: ReleasesProps) {
 export function Releases(props: ReleasesProps) {
   const { editor, beam } = props;
   const { chosen, refused, press, takeUsual } = useReleases(props);
+  const standing = useMemo(() => (refused ? null : misfit(beam, chosen)), [beam, chosen, refused]);
   const eligible = useMemo(() => new Set(eligibleRedundants(beam).map(keyOf)), [beam]);
   if (beam.degree === 0)
     return <p className="text-ink-2">Equilibrium alone finds every reaction: there is nothing to release.</p>;
   if (listAt(editor.document, '/beam/redundants').some((one) => textAt(one, '/when') !== ''))
     return <p className="text-ink-2">What is released depends on a condition. Change it in the form.</p>;
   const missing = beam.degree - chosen.length;
+  const shown = refused ?? standing;
   return (
     <div>
       <fieldset className="flex flex-wrap items-center gap-6" disabled={editor.readOnly}>
@@ -112,10 +114,10 @@ export function Releases(props: ReleasesProps) {
           ? `Choose ${missing} more.`
           : `Indeterminate to degree ${beam.degree}: ${beam.degree === 1 ? 'one is' : `${beam.degree} are`} released.`}
       </p>
-      {refused && (
+      {shown && (
         <div className="mt-8 flex flex-wrap items-center gap-14" role="alert">
-          {refused.motion && <MechanismSketch beam={beam} motion={refused.motion} label={refused.words} />}
-          <p className="min-w-0 flex-1 basis-180 font-semibold text-error">{refused.words}</p>
+          {shown.motion && <MechanismSketch beam={beam} motion={shown.motion} label={shown.words} />}
+          <p className="min-w-0 flex-1 basis-180 font-semibold text-error">{shown.words}</p>
         </div>
       )}
     </div>
@@ -142,6 +144,14 @@ function ReleaseButton({ symbol, isIn, isEligible, onPress }: ReleaseButtonProps
       {!isEligible && <span className="sr-only">, which equilibrium determines</span>}
     </button>
   );
+}
+
+/** What is wrong with the set that is written; one that is not whole yet is only counted. */
+function misfit(beam: Beam, set: readonly Redundant[]): Refused | null {
+  const fault = checkRedundants(beam, set).find(({ code }) => code !== 'wrong_count');
+  if (!fault) return null;
+  const motion = fault.motion ?? releaseMechanism(beam, set);
+  return { words: fault.message, motion };
 }
 
 /** Why these cannot all be released, and how the beam would move; null where they can, or where more are to come. */

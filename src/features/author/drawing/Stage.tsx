@@ -105,8 +105,10 @@ function Parts(props: StageProps) {
     event.preventDefault();
     if (act.do === 'go') goTo(act.to);
     else if (act.do === 'nudge') onNudge(part, act.steps);
-    else if (act.do === 'remove') onRemove(part);
-    else if (act.do === 'open') {
+    else if (act.do === 'remove') {
+      flushSync(() => onRemove(part));
+      focusParts(event.currentTarget.closest('[role=listbox]'));
+    } else if (act.do === 'open') {
       onSelect(part.pointer);
       onOpen();
     } else onSelect(null);
@@ -121,6 +123,8 @@ function Parts(props: StageProps) {
           <PartGrip
             key={`${part.pointer} ${index}`}
             part={part}
+            place={index + 1}
+            count={parts.length}
             grip={grip}
             layout={layout}
             isStop={index === stop}
@@ -138,6 +142,10 @@ function Parts(props: StageProps) {
     </g>
   );
 }
+
+/** Moves the focus to the part that the Tab key comes to. */
+export const focusParts = (within: Element | null): void =>
+  within?.querySelector<SVGElement>('[role=option][tabindex="0"]')?.focus();
 
 const orderOf = (part: Part | undefined): number => (part ? ORDER[part.kind] : 0);
 
@@ -161,6 +169,9 @@ function keyAct({ key, shiftKey }: KeyboardEvent, index: number, count: number):
 
 interface GripProps {
   readonly part: Part;
+  /** From the left, from 1; the order of drawing is another. */
+  readonly place: number;
+  readonly count: number;
   readonly grip: Grip;
   readonly layout: StageLayout;
   readonly isStop: boolean;
@@ -174,7 +185,17 @@ interface GripProps {
 /** A hand that trembles does not drag. */
 const STILL = 3;
 
-function PartGrip({ part, grip, layout, isStop, isChosen: isMarked, register, ...on }: GripProps) {
+function PartGrip({
+  part,
+  place,
+  count,
+  grip,
+  layout,
+  isStop,
+  isChosen: isMarked,
+  register,
+  ...on
+}: GripProps) {
   const { x, y, width, height } = grip;
   const held = useRef<{ readonly x: number; readonly perPx: number; isDragged: boolean } | null>(null);
   const onPointerDown = (event: PointerEvent<SVGGElement>) => {
@@ -205,6 +226,8 @@ function PartGrip({ part, grip, layout, isStop, isChosen: isMarked, register, ..
       aria-selected={isMarked}
       aria-label={part.name}
       tabIndex={isStop ? 0 : -1}
+      aria-posinset={place}
+      aria-setsize={count}
       data-part={part.pointer}
       onPointerDown={onPointerDown}
       onPointerMove={onPointerMove}

@@ -95,13 +95,13 @@ export function Tools({ tool, why, onExtend, onTake }: ToolsProps) {
       ref={bar}
       role="toolbar"
       aria-label="Add to the beam"
-      className="flex flex-wrap items-end gap-x-14 gap-y-6"
+      className="flex items-end gap-x-14 gap-y-6 max-md:overflow-x-auto max-md:pb-6 md:flex-wrap"
       onKeyDown={onKeyDown}
     >
       {GROUPS.map(({ name, tools }) => (
-        <fieldset key={name} className="min-w-0">
+        <fieldset key={name} className="flex-none">
           <legend className="caps mb-2">{name}</legend>
-          <div className="flex flex-wrap">
+          <div className="flex md:flex-wrap">
             {tools.map(([id, word]) => {
               const reason = why(id) ?? undefined;
               const isOff = reason !== undefined;

@@ -50,8 +50,8 @@ export function ValueStrip({ editor, template, system, faults }: ValueStripProps
         </span>
       </div>
       <details className="mt-6">
-        <summary className="flex min-h-28 cursor-pointer items-center text-schedule pointer-coarse:min-h-44">
-          <span>Values: {valueWords(template, values)}</span>
+        <summary className="flex min-h-28 cursor-pointer flex-wrap items-center text-schedule pointer-coarse:min-h-44">
+          <span className="link mr-8">Values</span> {valueWords(template, values)}
         </summary>
         <div className="-mx-(--pad)">
           <ParameterFields

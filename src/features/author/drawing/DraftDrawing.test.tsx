@@ -61,7 +61,7 @@ describe('the drawing of a draft', () => {
 
   test('marks the part that the form has chosen, by whichever of its fields', () => {
     const drawn = draw(beam, { selected: '/beam/supports/1/at' });
-    expect(drawn).toMatch(/aria-selected="true" aria-label="Support B[^>]*data-part="\/beam\/supports\/1"/);
+    expect(drawn).toContain('aria-selected="true" aria-label="Support B, roller, at L1, 6 m"');
     expect(count(drawn, 'class="selection"')).toBe(1);
     expect(drawn).toContain('Pin with a rotational spring');
   });

@@ -1,156 +1,79 @@
-import { type ReactNode, useCallback, useMemo, useRef, useState } from 'react';
+import { type ReactNode, type RefObject, useEffect, useMemo, useRef, useState } from 'react';
 import { flushSync } from 'react-dom';
 import { useWidth } from '@/components/drawing/use-width';
 import { Button } from '@/components/ui/Button';
-import type { Fault } from '@/engine/model';
+import { ZoneHeading } from '@/components/ui/ZoneHeading';
 import type { UnitSystemName } from '@/engine/quantity';
 import type { Written } from '@/features/review/draft';
-import { useRestedValue } from '@/features/template/use-live';
-import { pointer as pointerOf } from '@/lib/pointer';
 import { type Added, addOverhang, addSpan, noOverhang } from '../add';
 import type { EditorState } from '../edit';
 import { addAt, addOver } from './add';
+import { Findings } from './Findings';
+import { NotDrawn } from './NotDrawn';
 import { PartBar } from './PartBar';
 import { isPlaceTool, LengthPicker, PlacePicker, type Tool } from './Placing';
-import { Preview } from './Preview';
 import { partMoves } from './part-moves';
 import { drawnOf, type Part } from './parts';
-import { Releases } from './Releases';
-import { type BeamReading, beamOf } from './releases';
-import { focusParts, Stage } from './Stage';
-import { drawableTemplate, type Sketch, sketchAt } from './sketch';
+import { beamOf } from './releases';
+import { focusParts, isChosen, Stage } from './Stage';
+import type { Sketch } from './sketch';
 import { layStage, type StageLayout } from './stage-layout';
-import { type AnyTool, Tools, WHAT } from './Tools';
+import { type AnyTool, type Extending, Tools, WHAT } from './Tools';
+import { useSketch } from './use-sketch';
 import { ValueStrip } from './ValueStrip';
 
 interface DraftDrawingProps {
   readonly editor: EditorState;
+  readonly letter?: string;
   readonly system?: UnitSystemName;
 }
 
 /** Of the drawing before the page lives, px. */
 const WIDTH = 760;
 
-/** A draft drawn as it is written: its parts chosen, added, moved and taken away, at values that can be changed. */
-export function DraftDrawing({ editor, system = 'metric' }: DraftDrawingProps) {
-  const host = useRef<HTMLDivElement>(null);
-  const width = useWidth(host, WIDTH);
-  const { template, sketch, isNow, valueFaults } = useSketch(editor);
-  return (
-    <details open className="group" aria-label="Drawing">
-      <summary className="flex min-h-44 cursor-pointer items-center font-semibold md:hidden">Drawing</summary>
-      <div ref={host} className="grid min-w-0 gap-10 [&>*]:min-w-0">
-        {!isNow && <NotDrawn editor={editor} hasSketch={sketch !== null} hasTemplate={template !== null} />}
-        <Board editor={editor} sketch={sketch} isNow={isNow} width={width} system={system}>
-          {template && template.parameters.length > 0 && (
-            <ValueStrip editor={editor} template={template} system={system} faults={valueFaults} />
-          )}
-        </Board>
-      </div>
-    </details>
-  );
-}
-
-/** The draft at the values that are shown; while it cannot be drawn, as it was when it last could. */
-function useSketch({ document, values }: EditorState) {
-  const template = useMemo(() => drawableTemplate(document), [document]);
-  const reading = useMemo(() => template && sketchAt(template, values), [template, values]);
-  const last = useRef<Sketch | null>(null);
-  if (reading?.ok) last.current = reading.sketch;
-  return {
-    template: template ?? last.current?.template ?? null,
-    sketch: reading?.ok ? reading.sketch : last.current,
-    isNow: reading?.ok ?? false,
-    valueFaults:
-      reading && !reading.ok
-        ? reading.faults.map(({ path, code, message }) => ({
-            pointer: pointerOf(['parameters', ...path]),
-            code,
-            message,
-          }))
-        : [],
-  };
-}
-
-interface NotDrawnProps {
-  readonly editor: EditorState;
-  readonly hasSketch: boolean;
-  readonly hasTemplate: boolean;
-}
-
-/** Why the drawing stands still, and a way to the first fault. */
-function NotDrawn({ editor, hasSketch }: NotDrawnProps) {
-  const { faults, select } = editor;
-  const own = faults.filter(({ pointer }) => /^\/(parameters|derived|beam)/.test(pointer));
-  const [first] = own;
-  if (!hasSketch)
-    return (
-      <p className="border border-dashed border-rule-strong px-14 py-10 text-ink-2">
-        Nothing is drawn yet. Add a span or an overhang: the beam starts there, with its length as a
-        parameter.
-      </p>
-    );
-  const count =
-    own.length === 1 ? 'One fault keeps' : own.length === 0 ? 'A fault keeps' : `${own.length} faults keep`;
-  return (
-    <div
-      className="hatch-edge flex flex-wrap items-center gap-x-14 gap-y-6 bg-ochre-wash px-10 py-6"
-      role="status"
-    >
-      <span>{count} the draft from being drawn. The last good drawing stands.</span>
-      {first && (
-        <Button size="small" onClick={() => select(first.pointer)}>
-          Go to the first
-        </Button>
-      )}
-    </div>
-  );
-}
-
-interface BoardProps {
-  readonly editor: EditorState;
-  readonly sketch: Sketch | null;
-  readonly isNow: boolean;
-  readonly width: number;
-  readonly system: UnitSystemName;
-  /** The values that it is shown at. */
-  readonly children: ReactNode;
-}
-
-/** Tools, the drawing, and what is said of the chosen part and of the whole. */
-function Board({ editor, sketch, isNow, width, system, children }: BoardProps) {
+/**
+ * A draft drawn as it is written: its parts chosen, added, moved and taken away, at values that can be changed. The
+ * beam itself stays in view above the form.
+ */
+export function DraftDrawing({ editor, letter = 'A', system = 'metric' }: DraftDrawingProps) {
+  const { template, sketch, isNow, faults } = useSketch(editor);
   const [tool, setTool] = useState<Tool | null>(null);
-  const { document, readOnly } = editor;
   const add = ({ edits, select }: Added) => {
     setTool(null);
     editor.edit(...edits);
     editor.select(select);
   };
-  const canAdd = !readOnly && (isNow || sketch === null);
+  const canAdd = !editor.readOnly && (isNow || sketch === null);
+  const { document } = editor;
+  const extend = (way: Extending) => add(way === 'span' ? addSpan(document) : addOverhang(document, way));
   return (
     <>
-      {canAdd && (
-        <Tools
-          tool={tool}
-          why={(tool) => whyNot(editor.document, tool, isNow && sketch !== null)}
-          onExtend={(way) => add(way === 'span' ? addSpan(document) : addOverhang(document, way))}
-          onTake={setTool}
-        />
-      )}
-      {!sketch && children}
+      <section className="grid gap-10 px-(--pad) pt-12 pb-10 [&>*]:min-w-0" aria-label="Drawing">
+        <ZoneHeading letter={letter}>Drawing</ZoneHeading>
+        {!isNow && <NotDrawn editor={editor} isEmpty={sketch === null} />}
+        {canAdd && (
+          <Tools
+            tool={tool}
+            why={(one) => whyNot(document, one, sketch !== null)}
+            onExtend={extend}
+            onTake={setTool}
+          />
+        )}
+      </section>
       {sketch && (
-        <Drawing
+        <Beam
           editor={editor}
           sketch={sketch}
           isNow={isNow}
-          width={width}
           system={system}
           tool={isNow ? tool : null}
           onAdd={add}
           onLeave={() => setTool(null)}
         >
-          {children}
-        </Drawing>
+          {template && template.parameters.length > 0 && (
+            <ValueStrip editor={editor} template={template} system={system} faults={faults} />
+          )}
+        </Beam>
       )}
     </>
   );
@@ -163,116 +86,128 @@ function whyNot(document: Written, tool: AnyTool, hasBeam: boolean): string | nu
   return hasBeam ? null : 'Add a span first.';
 }
 
-interface DrawingProps extends BoardProps {
+interface BeamProps {
+  readonly editor: EditorState;
   readonly sketch: Sketch;
+  readonly isNow: boolean;
+  readonly system: UnitSystemName;
   readonly tool: Tool | null;
   readonly onAdd: (added: Added) => void;
   readonly onLeave: () => void;
+  /** The values that it is shown at. */
+  readonly children: ReactNode;
 }
 
-function Drawing({ editor, sketch, isNow, width, system, tool, onAdd, onLeave, children }: DrawingProps) {
-  const bar = useRef<HTMLDivElement>(null);
+/** The beam, which stays in view, and below it what is said of the chosen part and of the whole. */
+function Beam({ editor, sketch, isNow, system, tool, onAdd, onLeave, children }: BeamProps) {
   const stage = useRef<HTMLDivElement>(null);
+  const width = useWidth(stage, WIDTH);
   const drawn = useMemo(() => drawnOf(sketch), [sketch]);
   const layout = useMemo(() => layStage(drawn.beam, width), [drawn, width]);
   const reading = useMemo(() => beamOf(sketch), [sketch]);
+  const bar = useRef<HTMLDivElement>(null);
   const moves = partMoves(editor, sketch);
-  const part = drawn.parts.find(({ pointer }) => isPartOf(pointer, editor.selected));
-  const motion = 'faults' in reading ? reading.faults.find((fault) => fault.motion)?.motion : undefined;
+  const part = drawn.parts.find(({ pointer }) => isChosen(pointer, editor.selected));
   const remove = (gone: Part) => {
     flushSync(() => moves.remove(gone));
     focusParts(stage.current);
   };
-  const open = useCallback(
-    () => requestAnimationFrame(() => bar.current?.querySelector<HTMLElement>('select, button')?.focus()),
-    [],
-  );
+  const shared = { sketch, layout, onLeave };
   return (
     <>
-      <div ref={stage}>
+      <InView of={stage} height={layout.height}>
         <Stage
           drawn={drawn}
           layout={layout}
           selected={editor.selected}
-          motion={motion}
+          motion={'faults' in reading ? reading.faults.find((fault) => fault.motion)?.motion : undefined}
           isLastGood={!isNow}
           onSelect={editor.select}
           onRemove={moves.remove}
           onDrag={moves.drag}
           onNudge={moves.nudge}
-          onOpen={open}
+          onOpen={() => requestAnimationFrame(() => firstControl(bar.current)?.focus())}
         >
-          {tool && <Placing {...{ tool, sketch, layout, editor, onAdd, onLeave }} />}
+          {tool && <Placing {...shared} tool={tool} document={editor.document} onAdd={onAdd} />}
         </Stage>
-      </div>
-      <div ref={bar}>
+      </InView>
+      <section
+        ref={bar}
+        className="grid gap-10 border-b border-ink px-(--pad) pt-8 pb-14 [&>*]:min-w-0"
+        aria-label="Chosen part, values and results"
+      >
+        {tool && <PlacingHelp tool={tool} onLeave={onLeave} />}
         {isNow && part && !tool && (
           <PartBar editor={editor} sketch={sketch} part={part} onRemove={() => remove(part)} />
         )}
-        {tool && <PlacingHelp tool={tool} onLeave={onLeave} />}
+        {children}
+        {isNow && (
+          <Findings editor={editor} sketch={sketch} reading={reading} layout={layout} system={system} />
+        )}
+      </section>
+    </>
+  );
+}
+
+const firstControl = (within: Element | null): HTMLElement | null =>
+  within?.querySelector('select, button') ?? null;
+
+interface InViewProps {
+  readonly of: RefObject<HTMLDivElement | null>;
+  /** Of the drawing, px. */
+  readonly height: number;
+  readonly children: ReactNode;
+}
+
+/** Stays at the top while the form is scrolled, unless it is folded away; what is scrolled to stops below it. */
+function InView({ of, height, children }: InViewProps) {
+  const [isFolded, setFolded] = useState(false);
+  const sticky = useRef<HTMLDivElement>(null);
+  useEffect(() => {
+    const { style } = window.document.documentElement;
+    const covered = sticky.current?.offsetHeight ?? 0;
+    style.scrollPaddingTop = `${isFolded ? covered : Math.max(covered, height)}px`;
+    return () => {
+      style.scrollPaddingTop = '';
+    };
+  }, [height, isFolded]);
+  return (
+    <div ref={sticky} className="sticky top-0 z-10 border-b border-rule bg-paper px-(--pad) print:static">
+      <div className="flex justify-end md:hidden">
+        <Button tone="text" aria-expanded={!isFolded} onClick={() => setFolded(!isFolded)}>
+          {isFolded ? 'Show the beam' : 'Fold the beam away'}
+        </Button>
       </div>
-      {children}
-      {isNow && (
-        <Findings editor={editor} sketch={sketch} reading={reading} layout={layout} system={system} />
-      )}
-    </>
+      <div ref={of} className={isFolded ? 'max-md:hidden' : ''}>
+        {children}
+      </div>
+    </div>
   );
 }
 
-interface FindingsProps extends Pick<DrawingProps, 'editor' | 'sketch' | 'system'> {
-  readonly reading: BeamReading;
-  readonly layout: StageLayout;
-}
-
-/** What follows from the draft at these values: its releases, moments and reactions, or why it has none. */
-function Findings({ editor, sketch, reading, layout, system }: FindingsProps) {
-  const rested = useRestedValue(sketch);
-  if ('faults' in reading)
-    return (
-      <p className="font-semibold text-error" role="status">
-        {reading.faults.map(standingWords).join(' ')}
-      </p>
-    );
-  return (
-    <>
-      <Named title="Released first">
-        <Releases editor={editor} sketch={sketch} beam={reading.beam} />
-      </Named>
-      <Named title="Moment and reactions">
-        <Preview sketch={rested} layout={layout} system={system} />
-      </Named>
-    </>
-  );
-}
-
-/** A template's beam is always held sideways: it has no other way out. */
-const standingWords = ({ code, motion, message }: Fault): string =>
-  code === 'unstable' && !motion ? 'Nothing holds the beam sideways. Make one support a pin.' : message;
-
-const isPartOf = (part: string, selected: string | null): boolean =>
-  selected === part || (selected?.startsWith(`${part}/`) ?? false);
-
-function Named({ title, children }: { readonly title: string; readonly children: ReactNode }) {
-  return (
-    <section className="border-t border-rule pt-8" aria-label={title}>
-      <h3 className="caps mb-6">{title}</h3>
-      {children}
-    </section>
-  );
-}
-
-type PlacingProps = Pick<DrawingProps, 'sketch' | 'editor' | 'onAdd' | 'onLeave'> & {
+interface PlacingProps {
   readonly tool: Tool;
+  readonly sketch: Sketch;
   readonly layout: StageLayout;
-};
+  readonly document: Written;
+  readonly onAdd: (added: Added) => void;
+  readonly onLeave: () => void;
+}
 
-function Placing({ tool, sketch, layout, editor, onAdd, onLeave }: PlacingProps) {
-  const { document } = editor;
-  const shared = { sketch, layout, what: WHAT[tool], onLeave };
+function Placing({ tool, document, onAdd, ...shared }: PlacingProps) {
+  const { sketch } = shared;
   return isPlaceTool(tool) ? (
-    <PlacePicker {...shared} onPlace={(target) => onAdd(addAt(document, sketch, tool, target))} />
+    <PlacePicker
+      {...shared}
+      what={WHAT[tool]}
+      onPlace={(target) => onAdd(addAt(document, sketch, tool, target))}
+    />
   ) : (
-    <LengthPicker {...shared} onPlace={(bay) => onAdd(addOver(document, sketch, tool, bay))} />
+    <LengthPicker
+      {...shared}
+      what={WHAT[tool]}
+      onPlace={(bay) => onAdd(addOver(document, sketch, tool, bay))}
+    />
   );
 }
 

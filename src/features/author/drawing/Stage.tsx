@@ -81,7 +81,8 @@ const ORDER: Readonly<Record<Part['kind'], number>> = {
   hinge: 7,
 };
 
-const isChosen = (pointer: Pointer, selected: Pointer | null): boolean =>
+/** Whether the part, or something inside it, is the one that is pointed out. */
+export const isChosen = (pointer: Pointer, selected: Pointer | null): boolean =>
   selected === pointer || (selected?.startsWith(`${pointer}/`) ?? false);
 
 function Parts(props: StageProps) {
@@ -228,7 +229,6 @@ function PartGrip({
       tabIndex={isStop ? 0 : -1}
       aria-posinset={place}
       aria-setsize={count}
-      data-part={part.pointer}
       onPointerDown={onPointerDown}
       onPointerMove={onPointerMove}
       onPointerUp={letGo}

@@ -13,7 +13,14 @@ const ALIASES: Readonly<Record<string, string>> = {
 
 export type DesignationParts = { family: string; sizes: readonly string[] };
 
+const ASCII_ONLY = /^[ -~]*$/;
+
 const plain = (text: string) =>
+  ASCII_ONLY.test(text)
+    ? text.toLowerCase().replaceAll('*', 'x').replaceAll(/["']/g, '')
+    : unicodePlain(text);
+
+const unicodePlain = (text: string) =>
   text
     .replaceAll(/[½¼¾⅛⅜⅝⅞]/g, (character) => ` ${character}`)
     .normalize('NFKC')
@@ -24,7 +31,7 @@ const plain = (text: string) =>
 
 /** "12" stays, "92.0" is "92", "1/4" is "0.25", "1-1/2" and "1 1/2" are "1.5". */
 function size(text: string): string {
-  const fraction = /^(?:(\d+)[ -])?(\d+)\/(\d+)$/.exec(text);
+  const fraction = text.includes('/') ? /^(?:(\d+)[ -])?(\d+)\/(\d+)$/.exec(text) : null;
   const value = fraction
     ? Number(fraction[1] ?? 0) + Number(fraction[2]) / Number(fraction[3])
     : Number(text.replace(',', '.'));
@@ -48,10 +55,9 @@ export function designationParts(text: string): DesignationParts {
  * One key for every way to write a designation: "W12X26", "W 12 × 26" and "w12*26" are w12x26; "hea200" and
  * "HE 200 A" are hea200; "533x210x92 UB" and "UB 533X210X92" are ub533x210x92.
  */
-export function designationKey(text: string): string {
-  const { family, sizes } = designationParts(text);
-  return family + sizes.join('x');
-}
+export const designationKey = (text: string): string => keyOfParts(designationParts(text));
+
+export const keyOfParts = ({ family, sizes }: DesignationParts): string => family + sizes.join('x');
 
 /** The designation in ASCII as the standards write it: one blank between words, x between sizes. */
 export const asciiDesignation = (text: string): string =>

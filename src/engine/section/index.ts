@@ -1,4 +1,11 @@
-export { asciiDesignation, designationKey, designationParts, designationRank } from './designation';
+export {
+  asciiDesignation,
+  type DesignationParts,
+  designationKey,
+  designationParts,
+  designationRank,
+  keyOfParts,
+} from './designation';
 export {
   cornerRadii,
   depthOf,

@@ -122,7 +122,7 @@ function readDigits(digits: string, scale: number, mark: DecimalMark): number | 
   if (read === null || !Number.isFinite(number) || Math.abs(number) > LARGEST) {
     return error(34, 'not_a_number', `"${digits.slice(0, 40)}" is not a number of a section. Correct it.`);
   }
-  const value = Number((number * scale).toPrecision(15));
+  const value = number * scale;
   if (read.fault === 'mark') {
     const words = mark === ',' ? 'a comma' : 'a point';
     const suggestion = read.plain.replace('.', mark);
@@ -213,9 +213,7 @@ const PLAIN = { '.': /^\d{1,12}(?:\.\d{1,12})?$/, ',': /^\d{1,12}(?:,\d{1,12})?$
 /** One numeric cell in SI, by its own unit if it has one, else by the column's; or what is odd about it. */
 export function readCell(raw: string, column: CellColumn, mark: DecimalMark): number | CellFault {
   if (PLAIN[mark].test(raw)) {
-    return Number(
-      ((mark === ',' ? Number(raw.replace(',', '.')) : Number(raw)) * column.scale).toPrecision(15),
-    );
+    return Number(mark === ',' ? raw.replace(',', '.') : raw) * column.scale;
   }
   return readOddNumber(raw, cellText(raw), column, mark);
 }

@@ -296,8 +296,11 @@ export type FileFacts = {
   heldLines: number[];
 };
 
-/** Which of the sizes in the names is what: the first the depth, the last the mass, in the file's own units. */
-export type NameFacts = { mass: boolean; depth: boolean; sizes: boolean };
+/**
+ * What most names of the file carry: the mass as their last size, the sizes of tubes and solids; and by family how deep
+ * sections usually are over the first size of their name.
+ */
+export type NameFacts = { mass: boolean; sizes: boolean; depths: Readonly<Record<string, number>> };
 
 export type CheckedRow = { line: number; row: SectionRow };
 /** `rowsDone` counts from the start of the file: where to go on from. */

@@ -1,4 +1,3 @@
-import { designationKey } from '@/engine/section';
 import type { FileFacts, Finding, NumberField } from './contract';
 import { dropRow, findingOf } from './finding';
 import { FIELD_WORDS } from './headings';
@@ -131,7 +130,7 @@ export function findDuplicates(store: RowStore, plan: Plan): Pick<FileFacts, 'fi
   const heldLines: number[] = [];
   const single: number[] = [];
   for (let at = 0; at < store.count; at++) {
-    const key = designationKey(store.printed[at] ?? '');
+    const key = store.keys[at] ?? '';
     if (key === '') continue;
     const first = seen.get(key);
     if (first === undefined) {

@@ -57,7 +57,10 @@ const replaces = (edit: Edit, before: Edit) =>
   edit.column === before.column;
 
 /** Mapping and edits with a fix applied. The bytes of the file are never changed. */
-export function applyFix({ mapping, edits }: ImportState, { edit }: Pick<Fix, 'edit'>): ImportState {
+export function applyFix(
+  { mapping, edits }: ImportState,
+  { edit }: Pick<Fix, 'edit'> & Partial<Fix>,
+): ImportState {
   if (isMappingEdit(edit)) return { mapping: applyToMapping(mapping, edit), edits };
   if (edits.some((before) => same(before, edit))) return { mapping, edits };
   return { mapping, edits: [...edits.filter((before) => !replaces(edit, before)), edit] };

@@ -1,4 +1,4 @@
-import { designationParts, type SectionShape } from '@/engine/section';
+import type { SectionShape } from '@/engine/section';
 import { cellText, halfDigit } from './cells';
 import type { Cause, Finding, NameFacts, NumberField, RuleNumber } from './contract';
 import { dropRow, findingOf } from './finding';
@@ -9,8 +9,8 @@ const INCH = 0.0254; // m
 const MILLIMETRE = 0.001; // m
 const TIMBER = 1500; // kg/m³: no wood is as heavy, no metal as light
 
-/** Sizes in a name, as numbers. */
-export const sizesOf = (printed: string): number[] => designationParts(printed).sizes.map(Number);
+/** Sizes in a row's name, as numbers. */
+const sizesOf = ({ name }: Pick<RowRead, 'name'>): number[] => name.sizes.map(Number);
 
 /** The unit in which a size of a name comes nearest to what was measured. */
 function nominalUnit(size: number, measured: number): number {
@@ -22,25 +22,23 @@ const isFlanged = (shape: SectionShape | null) => shape === 'i' || shape === 'ch
 
 /** The mass that a name ends with, and that of the row, in the unit of its column. */
 function massesOf(row: RowRead, column: NumberColumn | undefined) {
-  const sizes = sizesOf(row.printed);
+  if (!isFlanged(row.shape)) return null;
+  const sizes = sizesOf(row);
   const { mass } = row.values;
-  if (!isFlanged(row.shape) || sizes.length < 2 || mass === undefined || !column) return null;
+  if (sizes.length < 2 || mass === undefined || !column) return null;
   return { named: sizes.at(-1) ?? 0, given: mass / column.scale };
 }
 
 /** The mass may be rounded to a whole number in the name, and a little differently in the column. */
 const MASS_ROOM = 1;
 
-const BELOW = 0.95; // of the depth in the name
+const BELOW = 0.95; // of what the name and its family say: light ones, HE AA, all stay below their names
 const ABOVE = 1.6; // heavy columns are rolled far above their serial depth
 
-function depthRatio({
-  printed,
-  values,
-  shape,
-}: RowRead): { size: number; unit: number; ratio: number } | null {
-  const [size] = sizesOf(printed);
-  if (!isFlanged(shape) || size === undefined || size === 0 || values.h === undefined) return null;
+function depthRatio({ name, values, shape }: RowRead): { size: number; unit: number; ratio: number } | null {
+  if (!isFlanged(shape)) return null;
+  const [size] = sizesOf({ name });
+  if (size === undefined || size === 0 || values.h === undefined) return null;
   const unit = nominalUnit(size, values.h);
   return { size, unit, ratio: values.h / (size * unit) };
 }
@@ -76,7 +74,7 @@ function matchSizes([one, other]: readonly number[], { h, b }: Values, isTimber:
 
 function matchTube(row: RowRead): SizeMatch | null {
   const { h, b = h } = row.values;
-  const sizes = sizesOf(row.printed);
+  const sizes = sizesOf(row);
   const [one = 0, other = one] = row.shape === 'chs' ? [sizes[0]] : sizes;
   if (h === undefined || b === undefined || one === 0) return null;
   const unit = nominalUnit(one, h);
@@ -87,34 +85,45 @@ function matchTube(row: RowRead): SizeMatch | null {
 
 const isTube = (shape: SectionShape | null) => shape === 'rhs' || shape === 'shs' || shape === 'chs';
 function matchOf(row: RowRead, plan: Plan): SizeMatch | null {
-  if (row.shape === 'rectangle')
-    return matchSizes(sizesOf(row.printed), row.values, plan.mapping.density < TIMBER);
+  if (row.shape === 'rectangle') return matchSizes(sizesOf(row), row.values, plan.mapping.density < TIMBER);
   return isTube(row.shape) ? matchTube(row) : null;
 }
 
+const FEW = 3; // sections of a family, from which its usual depth is told
+
 /** Counts, row by row, what the names of a file carry. */
 export class NameCount {
-  private readonly of = { mass: 0, depth: 0, sizes: 0 };
-  private readonly fits = { mass: 0, depth: 0, sizes: 0 };
+  private readonly of = { mass: 0, sizes: 0 };
+  private readonly fits = { mass: 0, sizes: 0 };
+  private readonly depths = new Map<string, number[]>();
 
   add(row: RowRead, plan: Plan): void {
-    const count = (kind: keyof NameFacts, fits: boolean) => {
+    const count = (kind: 'mass' | 'sizes', fits: boolean) => {
       this.of[kind]++;
       if (fits) this.fits[kind]++;
     };
     const masses = massesOf(row, columnOf(plan, 'mass'));
     if (masses) count('mass', Math.abs(masses.named - masses.given) <= MASS_ROOM);
-    const depth = depthRatio(row);
-    if (depth) count('depth', depth.ratio >= BELOW && depth.ratio <= ABOVE);
     const match = matchOf(row, plan);
     if (match) count('sizes', match !== 'other');
+    const depth = depthRatio(row);
+    if (!depth) return;
+    const ratios = this.depths.get(row.name.family);
+    if (ratios) ratios.push(depth.ratio);
+    else this.depths.set(row.name.family, [depth.ratio]);
   }
 
   facts(): NameFacts {
-    const most = (kind: keyof NameFacts) => this.of[kind] > 0 && this.fits[kind] >= MOST * this.of[kind];
-    return { mass: most('mass'), depth: most('depth'), sizes: most('sizes') };
+    const most = (kind: 'mass' | 'sizes') => this.of[kind] > 0 && this.fits[kind] >= MOST * this.of[kind];
+    const depths: Record<string, number> = {};
+    for (const [family, ratios] of this.depths) {
+      const usual = [...ratios].sort((a, b) => a - b)[Math.floor(ratios.length / 2)] ?? 0;
+      if (ratios.length >= FEW && usual > LEAST_DEPTH && usual < ABOVE) depths[family] = usual;
+    }
+    return { mass: most('mass'), sizes: most('sizes'), depths };
   }
 }
+const LEAST_DEPTH = 0.85; // of the name: below, its first size is no depth
 const MOST = 0.6; // of the rows: then names carry it, and the others are at fault
 
 type Said = {
@@ -155,9 +164,9 @@ function massFinding(row: RowRead, plan: Plan): Finding | null {
   return report(row, plan, said, `${plainly(masses.named)} ${column.unit}`, formula);
 }
 
-function depthFinding(row: RowRead, plan: Plan): Finding | null {
+function depthFinding(row: RowRead, plan: Plan, usual: number): Finding | null {
   const depth = depthRatio(row);
-  if (!depth || (depth.ratio >= BELOW && depth.ratio <= ABOVE)) return null;
+  if (!depth || (depth.ratio >= BELOW * Math.min(usual, 1) && depth.ratio <= ABOVE)) return null;
   const message =
     'The depth is far from the one in the name: the name or the row belongs to another section.';
   const said = { rule: 17, severity: 'warning', cause: 'name_depth', message, field: 'h' } as const;
@@ -167,7 +176,7 @@ function depthFinding(row: RowRead, plan: Plan): Finding | null {
     plan,
     said,
     `${depth.size} ${unit}`,
-    `h over the depth in the name is ${depth.ratio.toFixed(2)}`,
+    `h over the depth in the name is ${depth.ratio.toFixed(2)}, in the family ${usual.toFixed(2)}`,
   );
 }
 
@@ -175,7 +184,7 @@ function sizeFinding(row: RowRead, plan: Plan): Finding | null {
   const match = matchOf(row, plan);
   if (match === null || match === 'as_named' || match === 'dressed') return null;
   const isTimber = row.shape === 'rectangle' && plan.mapping.density < TIMBER;
-  const sizes = sizesOf(row.printed).slice(0, row.shape === 'chs' ? 1 : 2);
+  const sizes = sizesOf(row).slice(0, row.shape === 'chs' ? 1 : 2);
   const named = sizes.map(String).join(' × ');
   if (match === 'nominal') {
     const actual = sizes.map((size) => plainly(dressed(size)[0] ?? size)).join(' × ');
@@ -209,9 +218,10 @@ function clearFinding(row: RowRead, plan: Plan): Finding | null {
 
 /** What a row's name says against its values, and its clear depth. */
 export function nameFindings(row: RowRead, plan: Plan, names: NameFacts): Finding[] {
+  const usual = names.depths[row.name.family];
   return [
     names.mass ? massFinding(row, plan) : null,
-    names.depth ? depthFinding(row, plan) : null,
+    usual === undefined ? null : depthFinding(row, plan, usual),
     names.sizes ? sizeFinding(row, plan) : null,
     clearFinding(row, plan),
   ].filter((finding) => finding !== null);

@@ -1,5 +1,7 @@
 import {
   cornerRadii,
+  type DesignationParts,
+  designationParts,
   designWall,
   SECTION_SHAPES,
   type SectionDimensions,
@@ -19,6 +21,8 @@ export type Values = { [Name in NumberField]?: number };
 export type RowRead = {
   line: FileLine;
   printed: string;
+  /** Family and sizes of the name. */
+  name: DesignationParts;
   shape: SectionShape | null;
   values: Values;
   findings: Finding[];
@@ -244,7 +248,7 @@ export function readRow(line: FileLine, plan: Plan): RowRead {
   const shape = readShape(line, plan, printed, findings);
   const values = shape === null ? {} : readValues(line, printed, shape, plan, findings);
   if (plan.others.length > 0) readOthers(line, printed, plan, findings);
-  return { line, printed, shape, values, findings };
+  return { line, printed, name: designationParts(printed), shape, values, findings };
 }
 
 /** Dimensions in m; NaN where a size is missing. A root radius that is missing is 0. */

@@ -1,4 +1,11 @@
-import { dimensionFaults, SECTION_SHAPES, type SectionDimensions, type SectionShape } from '@/engine/section';
+import {
+  type DesignationParts,
+  dimensionFaults,
+  keyOfParts,
+  SECTION_SHAPES,
+  type SectionDimensions,
+  type SectionShape,
+} from '@/engine/section';
 import type { Mapping, NumberField } from './contract';
 import { dimensionsOf, type RowRead, SIZES, type Values } from './reading';
 
@@ -17,10 +24,19 @@ class GrowingColumn {
   }
 }
 
+/** "ub 533x210" of UB 533×210×92, "ipe" of IPE 300; null of a name without sizes. */
+function serialOf({ family, sizes }: DesignationParts): string | null {
+  if (sizes.length === 0) return null;
+  return sizes.length === 1 ? family : `${family} ${sizes.slice(0, -1).join('x')}`;
+}
+
 /** The rows of a file in columns of numbers: some 150 bytes a row, so that all can be compared with each other. */
 export class RowStore {
   readonly printed: string[] = [];
   readonly lines: number[] = [];
+  readonly keys: string[] = [];
+  /** Family and sizes but the last, which is the mass or the wall; null of what is no rolled series. */
+  readonly serials: (string | null)[] = [];
   private readonly shapes: number[] = [];
   private readonly columns: ReadonlyMap<NumberField, GrowingColumn>;
 
@@ -32,10 +48,12 @@ export class RowStore {
     return this.lines.length;
   }
 
-  add({ line, printed, shape, values }: RowRead): void {
+  add({ line, printed, name, shape, values }: RowRead): void {
     const at = this.lines.length;
     this.lines.push(line.number);
     this.printed.push(printed);
+    this.keys.push(keyOfParts(name));
+    this.serials.push(shape === 'i' || shape === 'channel' ? serialOf(name) : null);
     this.shapes.push(shape === null ? -1 : SECTION_SHAPES.indexOf(shape));
     for (const field of this.fields) {
       const value = values[field];

@@ -1,5 +1,12 @@
 import { toUnit } from '@/engine/quantity';
-import { asciiDesignation, depthOf, designationKey, type TabulatedName, widthOf } from '@/engine/section';
+import {
+  asciiDesignation,
+  depthOf,
+  keyOfParts,
+  type SectionDimensions,
+  type TabulatedName,
+  widthOf,
+} from '@/engine/section';
 import type { SectionRow } from '../section';
 import { cellText } from './cells';
 import type { JudgedRow } from './judge-row';
@@ -15,9 +22,18 @@ const units = {
 };
 const inUnit = (value: number, unit: keyof typeof units) => Number((value * units[unit]).toPrecision(EXACT));
 
+/** 7.6 × 0.001 as 0.0076: lengths without the last bit of their conversion. */
+const rounded = <D extends SectionDimensions>(dimensions: D): D => {
+  const lengths: Record<string, unknown> = {};
+  for (const [symbol, value] of Object.entries(dimensions)) {
+    lengths[symbol] = typeof value === 'number' ? Number(value.toPrecision(EXACT)) : value;
+  }
+  return lengths as D;
+};
+
 /** The supplied values; what the file does not give is computed from the dimensions and named so. Null of a faulty row. */
 export function toSectionRow(row: JudgedRow, plan: Plan): SectionRow | null {
-  const { dimensions, computed: properties, values, printed, line } = row;
+  const { dimensions, computed: properties, values, printed, name, line } = row;
   if (!dimensions || !properties) return null;
   const named = plan.computed === null ? '' : cellText(line.cells[plan.computed] ?? '');
   const computed = new Set(named === '' ? [] : named.split(/[\s;]+/));
@@ -41,13 +57,13 @@ export function toSectionRow(row: JudgedRow, plan: Plan): SectionRow | null {
   return {
     designation: asciiDesignation(printed),
     printed,
-    key: designationKey(printed),
+    key: keyOfParts(name),
     shape: dimensions.shape,
     depth_mm: inUnit(depthOf(dimensions), 'mm'),
     width_mm: inUnit(widthOf(dimensions), 'mm'),
     mass_kg_m: Number((values.mass ?? plan.mapping.density * properties.area).toPrecision(EXACT)),
     ...supplied,
     computed: [...computed].sort(),
-    dimensions,
+    dimensions: rounded(dimensions),
   };
 }

@@ -167,19 +167,19 @@ export class Survey implements SurveyReading {
     });
   }
 
-  /** A column of which no cell ends in 0 has lost its trailing zeros: its rounding cannot be told. */
+  /** Columns of which no cell ends in 0 have lost their trailing zeros: how far they are rounded cannot be told. */
   private lostZeros(): Finding[] {
-    return this.plan.numbers.flatMap(({ index, heading }) => {
+    const lost = this.plan.numbers.filter(({ index }) => {
       const { decimals = 0, zeros = 0, cells = 0 } = this.cells.get(index) ?? {};
-      if (decimals < 50 || zeros > 0 || decimals === cells) return [];
-      const message =
-        'No cell ends in 0: trailing zeros are lost, and with them how far the values are rounded.';
-      return [
-        findingOf({ rule: 34, severity: 'note', cause: 'zeros_lost', column: index, heading, message }),
-      ];
+      return decimals >= ENOUGH && zeros === 0 && decimals < cells;
     });
+    if (lost.length === 0) return [];
+    const headings = lost.map(({ heading }) => heading).join(', ');
+    const message = `No cell ends in 0 in ${headings}: trailing zeros are lost, and with them how far values are rounded.`;
+    return [findingOf({ rule: 34, severity: 'note', cause: 'zeros_lost', read: headings, message })];
   }
 }
+const ENOUGH = 50; // cells with decimals, of which one in ten would end in 0
 
 /** The first findings of each group, and the counts of all. */
 function listed(all: readonly Finding[]): Pick<FileFacts, 'findings' | 'counts'> {

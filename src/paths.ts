@@ -31,7 +31,11 @@ export const paths = {
     `/library/${kind}/${encodeURIComponent(slug)}/revisions/${number}/withdraw`,
   libraryDraft: (kind: string, slug: string, number: number) =>
     `/library/${kind}/${encodeURIComponent(slug)}/drafts/${number}`,
+  /** A draft as its JSON text, for what has no form of its own. */
+  libraryDraftText: (kind: string, slug: string, number: number) =>
+    `/library/${kind}/${encodeURIComponent(slug)}/drafts/${number}?as=text`,
   newDocument: '/library/new',
+  newTemplate: '/library/new-template',
   imports: '/library/imports',
   import: (id: string) => `/library/imports/${encodeURIComponent(id)}`,
   /** What was found in a file and what became of it, for print. */

@@ -12,11 +12,10 @@ import { parseJson } from './json';
 /** Takes the draft's form: saves it, saves it and sends it to review, or lays it aside. */
 export const takeDraftForm = (actor: Actor, key: RevisionKey, form: FormData): Promise<Outcome> =>
   attempt(async () => {
-    const here = paths.libraryDraft(key.kind, key.slug, key.number);
     switch (textOf(form, 'step')) {
       case 'save':
         await save(actor, key, form);
-        return `${here}?done=saved`;
+        return `${paths.libraryDraftText(key.kind, key.slug, key.number)}&done=saved`;
       case 'submit':
         await submit(actor, key, await save(actor, key, form));
         return `${paths.review(key.kind, key.slug, key.number)}?done=submit`;

@@ -1,0 +1,133 @@
+import { Button } from '@/components/ui/Button';
+import { Notice } from '@/components/ui/Notice';
+import type { Autosave } from './autosave.api';
+import { placeWords } from './place-words';
+import { useDraft, useSnapshot } from './use-editor';
+
+const TIME = new Intl.DateTimeFormat('en-GB', { timeStyle: 'short' });
+
+/** "Saved 14:32 · version 7". */
+export function SaveNote() {
+  const saving = useSnapshot((snapshot) => snapshot.saving);
+  const version = useSnapshot((snapshot) => snapshot.version);
+  const conflicts = useSnapshot((snapshot) => snapshot.conflicts.length);
+  if (useSnapshot((snapshot) => snapshot.readOnly)) return <span>Version {version}</span>;
+  return (
+    <span role="status" data-saving={conflicts > 0 ? 'conflict' : saving.kind}>
+      {conflicts > 0 ? 'Not saved: decide first' : wordsOf(saving.kind)}
+      {conflicts === 0 && saving.kind === 'saved' && saving.at && ` ${TIME.format(saving.at)}`} · version{' '}
+      {version}
+    </span>
+  );
+}
+
+const wordsOf = (kind: 'saved' | 'waiting' | 'saving' | 'offline' | 'refused'): string =>
+  ({
+    saved: 'Saved',
+    waiting: 'Not saved yet',
+    saving: 'Saving',
+    offline: 'No answer: kept here',
+    refused: 'Not saved',
+  })[kind];
+
+/** What keeps the draft from being saved, and what somebody else changed meanwhile. */
+export function SaveNotices({ autosave }: { readonly autosave: () => Autosave | null }) {
+  const saving = useSnapshot((snapshot) => snapshot.saving);
+  const conflicts = useSnapshot((snapshot) => snapshot.conflicts);
+  const mergedAt = useSnapshot((snapshot) => snapshot.mergedAt);
+  const again = <Button onClick={() => void autosave()?.flush()}>Save now</Button>;
+  return (
+    <>
+      {saving.kind === 'offline' && (
+        <Notice title="The server does not answer." actions={again}>
+          <p>Go on writing: it is kept in this tab, and saved as soon as the server answers.</p>
+        </Notice>
+      )}
+      {saving.kind === 'refused' && (
+        <Notice tone="error" title="Not saved." actions={again}>
+          <p>{saving.message} What you wrote is kept in this tab.</p>
+        </Notice>
+      )}
+      {mergedAt && conflicts.length === 0 && (
+        <Notice title={`Somebody else saved at ${TIME.format(mergedAt)}: both changes are in.`}>
+          <p>No place was changed by both. What was done before cannot be undone any more.</p>
+        </Notice>
+      )}
+      {conflicts.length > 0 && <Conflicts />}
+    </>
+  );
+}
+
+function Conflicts() {
+  const store = useDraft();
+  const conflicts = useSnapshot((snapshot) => snapshot.conflicts);
+  const count = conflicts.length;
+  return (
+    <Notice
+      tone="error"
+      title={`Somebody else changed ${count === 1 ? 'a place' : `${count} places`} that you changed too.`}
+    >
+      <p>Everything else of both is in. Choose for each; then it is saved.</p>
+      <ul aria-label="Changed by both" className="mt-6 grid gap-10">
+        {conflicts.map((conflict) => {
+          const place = wordsAt(store.document, conflict.at);
+          return (
+            <li key={conflict.at} className="grid gap-6 border-t border-rule-strong pt-6">
+              <b className="font-semibold">{place}</b>
+              <span className="grid gap-8 md:grid-cols-2">
+                <Version
+                  title="Yours"
+                  value={conflict.mine}
+                  place={place}
+                  onTake={() => store.decideConflict(conflict, 'mine')}
+                />
+                <Version
+                  title="Theirs"
+                  value={conflict.theirs}
+                  place={place}
+                  onTake={() => store.decideConflict(conflict, 'theirs')}
+                />
+              </span>
+            </li>
+          );
+        })}
+      </ul>
+    </Notice>
+  );
+}
+
+const CHANGE_WORDS: Readonly<Record<string, string>> = {
+  '/change_note': 'What is new and why',
+  '/change_class': 'Class of change',
+  '/consequence': 'What is at stake',
+};
+
+const wordsAt = (document: Parameters<typeof placeWords>[0], at: string): string =>
+  CHANGE_WORDS[at] ?? placeWords(document, at.replace(/^\/document/, ''));
+
+interface VersionProps {
+  readonly title: string;
+  readonly value: unknown;
+  readonly place: string;
+  readonly onTake: () => void;
+}
+
+function Version({ title, value, place, onTake }: VersionProps) {
+  const text =
+    value === undefined
+      ? 'removed'
+      : typeof value === 'string'
+        ? value || 'empty'
+        : JSON.stringify(value, null, 1);
+  return (
+    <span className="grid content-start gap-6">
+      <span className="caps">{title}</span>
+      <span className="max-h-160 overflow-auto text-schedule wrap-anywhere whitespace-pre-wrap">{text}</span>
+      <span>
+        <Button size="small" aria-label={`Take ${title.toLowerCase()}: ${place}`} onClick={onTake}>
+          Take {title.toLowerCase()}
+        </Button>
+      </span>
+    </span>
+  );
+}

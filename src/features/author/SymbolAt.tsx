@@ -1,0 +1,41 @@
+import { useEffect, useRef, useState } from 'react';
+import { Field } from '@/components/ui/Field';
+import { isSymbol } from '@/engine/template/author';
+import type { Pointer } from './edit';
+import { useReadOnly } from './fields';
+import { renameEdits } from './rename';
+import { useDraft, useFaultAt, useTextAt } from './use-editor';
+
+/** The symbol of a parameter, column or derived value; left, it is renamed wherever it is spoken of. */
+export function SymbolAt({ at }: { readonly at: Pointer }) {
+  const store = useDraft();
+  const symbol = useTextAt(`${at}/symbol`);
+  const [typed, setTyped] = useState(symbol);
+  const good = useRef(symbol);
+  useEffect(() => {
+    setTyped(symbol);
+    if (isSymbol(symbol)) good.current = symbol;
+  }, [symbol]);
+  const commit = () => {
+    if (typed !== symbol) store.edit(...renameEdits(store.document, at, good.current, typed));
+  };
+  return (
+    <Field
+      data-at={`${at}/symbol`}
+      label="Symbol"
+      maxLength={20}
+      autoComplete="off"
+      spellCheck={false}
+      readOnly={useReadOnly()}
+      help="Changed here, it is changed in every expression."
+      error={useFaultAt(`${at}/symbol`)}
+      value={typed}
+      onChange={(event) => setTyped(event.target.value)}
+      onBlur={commit}
+      onKeyDown={(event) => {
+        if (event.key === 'Enter') commit();
+        if (event.key === 'Escape') setTyped(symbol);
+      }}
+    />
+  );
+}

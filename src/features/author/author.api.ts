@@ -1,0 +1,98 @@
+import { z } from 'zod';
+import { ProofView } from '@/features/proof/proof';
+import { DraftView, type SaveDraft } from '@/features/review/draft';
+import type { Fault } from '@/lib/app-error';
+import { paths } from '@/paths';
+
+export type DraftSaving =
+  | { readonly kind: 'saved'; readonly draft: DraftView }
+  /** Somebody saved before: the draft as it stands now. */
+  | { readonly kind: 'stale'; readonly current: DraftView }
+  | { readonly kind: 'unreachable' }
+  | Refusal;
+
+export interface Refusal {
+  readonly kind: 'refused';
+  readonly message: string;
+  readonly faults: readonly Fault[];
+}
+
+const problem = z.object({
+  detail: z.string(),
+  errors: z.array(z.object({ pointer: z.string(), code: z.string(), message: z.string() })),
+  current: z.unknown().optional(),
+});
+
+const SESSION_ENDED =
+  'The session has ended. Sign in in another tab, then go on here; nothing typed is lost.';
+
+interface DraftAddress {
+  readonly slug: string;
+  readonly revision: number;
+}
+
+const addressOf = ({ slug, revision }: DraftAddress): string => paths.api.draft('template', slug, revision);
+const revisionOf = ({ slug, revision }: DraftAddress): string =>
+  paths.api.revision('template', slug, revision);
+
+/** Saves over the version that was read. `keepalive` lets the request outlive the page. */
+export async function putDraft(
+  of: DraftAddress,
+  version: number,
+  body: SaveDraft,
+  keepalive = false,
+): Promise<DraftSaving> {
+  const response = await fetch(addressOf(of), {
+    method: 'PUT',
+    headers: { 'Content-Type': 'application/json', 'If-Match': `"${version}"` },
+    body: JSON.stringify(body),
+    keepalive,
+  }).catch(() => null);
+  const json: unknown = await response?.json().catch(() => null);
+  if (response?.ok) return { kind: 'saved', draft: DraftView.parse(json) };
+  const reading = problem.safeParse(json);
+  if (!response || response.status >= 500 || !reading.success) return { kind: 'unreachable' };
+  const { current } = reading.data;
+  if (response.status === 412 && current !== undefined)
+    return { kind: 'stale', current: DraftView.parse(current) };
+  return refusal(response.status, reading.data);
+}
+
+const refusal = (status: number, { detail, errors }: z.output<typeof problem>): Refusal =>
+  status === 401
+    ? { kind: 'refused', message: SESSION_ENDED, faults: [] }
+    : { kind: 'refused', message: detail, faults: errors };
+
+type Done<T> = { readonly kind: 'done'; readonly value: T } | Refusal;
+
+const LOST = 'The server does not answer. Try again in a moment.';
+
+async function ask<T>(
+  method: string,
+  url: string,
+  read: (json: unknown) => T,
+  version?: number,
+): Promise<Done<T>> {
+  const headers = version === undefined ? {} : { 'If-Match': `"${version}"` };
+  const response = await fetch(url, { method, headers }).catch(() => null);
+  const json: unknown = await response?.json().catch(() => null);
+  if (response?.ok) return { kind: 'done', value: read(json) };
+  const reading = problem.safeParse(json);
+  if (!response || !reading.success) return { kind: 'refused', message: LOST, faults: [] };
+  return refusal(response.status, reading.data);
+}
+
+/** Sends the version that was saved to review. */
+export const submitDraft = (of: DraftAddress, version: number) =>
+  ask('POST', `${revisionOf(of)}/submit`, () => null, version);
+
+export const layAside = (of: DraftAddress) => ask('DELETE', addressOf(of), () => null);
+
+export const askProof = (of: DraftAddress) =>
+  ask('POST', `${revisionOf(of)}/proof`, (json) => ProofView.parse(json));
+
+/** The newest proof; refused where there is none. */
+export const readProof = (of: DraftAddress) =>
+  ask('GET', `${revisionOf(of)}/proof`, (json) => ProofView.parse(json));
+
+export const bundleAddress = (of: DraftAddress): string => `${revisionOf(of)}/bundle`;

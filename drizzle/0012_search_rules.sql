@@ -222,19 +222,27 @@ CREATE TRIGGER search_follow AFTER INSERT OR UPDATE ON membership FOR EACH ROW E
 CREATE TRIGGER search_follow AFTER UPDATE ON person FOR EACH ROW
 	WHEN ((OLD.name, OLD.initials) IS DISTINCT FROM (NEW.name, NEW.initials)) EXECUTE FUNCTION search_follow();--> statement-breakpoint
 
--- Which entries of the practice answer: by the index, which no query of web's own may use. Keys and nothing else, and whoever asks
--- reads the entries under their own policy, so that a job for named people stays theirs.
+-- Which entries of the practice answer, and how well (GRADES of features/search/search.ts): by the index, which no query of web's own
+-- may use. Keys and nothing that an entry says: whoever asks leaves out the jobs and requests that he may not see, and reads the entries
+-- themselves under their own policy.
 GRANT SELECT ON search_entry TO putlog_lookup;--> statement-breakpoint
 CREATE POLICY search_entry_lookup ON search_entry FOR SELECT TO putlog_lookup USING (true);--> statement-breakpoint
-CREATE FUNCTION search_matches(asked tsquery) RETURNS TABLE (kind text, id uuid)
+CREATE FUNCTION search_matches(asked tsquery, named tsquery, mark text, title text)
+RETURNS TABLE (kind text, id uuid, job_id uuid, reader_id uuid, person_id uuid, standing smallint, changed_at timestamptz, grade smallint)
 LANGUAGE sql STABLE SECURITY DEFINER SET search_path = public, pg_temp AS $$
-	SELECT e.kind, e.id FROM search_entry e
+	SELECT e.kind, e.id, e.job_id, e.reader_id, e.person_id, e.standing, e.changed_at,
+		CASE WHEN e.mark_key = search_matches.mark THEN 0
+			WHEN search_matches.mark <> '' AND starts_with(e.mark_key, search_matches.mark) THEN 1
+			WHEN NOT e.names @@ named THEN 4
+			WHEN starts_with(lower(e.title), search_matches.title) THEN 2
+			ELSE 3 END::smallint
+	FROM search_entry e
 	WHERE e.practice_id = nullif(current_setting('app.practice_id', true), '')::uuid AND e.words @@ asked
 $$;--> statement-breakpoint
-REVOKE ALL ON FUNCTION search_matches(tsquery) FROM PUBLIC;--> statement-breakpoint
-GRANT EXECUTE ON FUNCTION search_matches(tsquery) TO putlog_web;--> statement-breakpoint
+REVOKE ALL ON FUNCTION search_matches(tsquery, tsquery, text, text) FROM PUBLIC;--> statement-breakpoint
+GRANT EXECUTE ON FUNCTION search_matches(tsquery, tsquery, text, text) TO putlog_web;--> statement-breakpoint
 GRANT CREATE ON SCHEMA public TO putlog_lookup;--> statement-breakpoint
-ALTER FUNCTION search_matches(tsquery) OWNER TO putlog_lookup;--> statement-breakpoint
+ALTER FUNCTION search_matches(tsquery, tsquery, text, text) OWNER TO putlog_lookup;--> statement-breakpoint
 REVOKE CREATE ON SCHEMA public FROM putlog_lookup;--> statement-breakpoint
 
 -- Entries of what is there already. The owner of the tables is no superuser everywhere: for this transaction his own tables are open to him.

@@ -83,6 +83,8 @@ const TENANT_TABLES = [
   'job',
   'member',
   'audit_event',
+  'search_entry',
+  'search_word',
 ] as const;
 
 describe('a query that forgets its WHERE', () => {

@@ -4,11 +4,10 @@ import type { Tx } from '@/db/client';
 import { type Tenant, withPractice } from '@/db/tenancy';
 import type { UnitSystemName } from '@/engine/quantity';
 import { designationRank } from '@/engine/section';
-import { type Person, requirePermission } from '@/features/account/permission';
+import { may, type Person, requirePermission } from '@/features/account/permission';
 import { sizeLine } from '@/features/section/display';
 import type { SectionItem } from '@/features/section/section';
 import {
-  GRADES,
   type Hit,
   hrefOf,
   inOrder,
@@ -54,8 +53,10 @@ export function search(actor: Actor, asked: Asked): Promise<Found> {
   if (question.words.length === 0)
     return Promise.resolve({ items: [], next: null, total: 0, kinds: [], instead: [] });
   return withPractice(actor, async (tx) => {
-    const sections = await sectionsOf(tx, actor, asked);
-    const entries = await entriesOf(tx, actor, asked, question);
+    const [sections, entries] = await Promise.all([
+      sectionsOf(tx, actor, asked),
+      entriesOf(tx, actor, asked, question),
+    ]);
     if (entries.length > 0 || sections.total > 0)
       return toFound(actor, asked, question, { entries, sections });
     const meant = await wordsMeant(tx, actor, question);
@@ -89,38 +90,36 @@ const entryRow = z.object({
 type EntryRow = z.output<typeof entryRow>;
 
 /**
- * Of each kind the best entries: by grade, then what is in use, then one's own, then what was changed last. They are
- * read under the entries' own policy; search_matches() says only which to look at.
+ * Of each kind the best entries: by grade, then what is in use, then one's own, then what was changed last. What
+ * search_matches() finds beyond the person's jobs and requests is left out here, so that it is not counted either; what
+ * an entry says is read under its own policy.
  */
 async function entriesOf(tx: Tx, actor: Actor, asked: Asked, question: Question): Promise<EntryRow[]> {
   const { practiceId, personId } = actor;
-  const from = asked.kind === undefined ? 0 : asked.from;
-  const to = from + (asked.kind === undefined ? Math.min(asked.limit, SHOWN_OF_KIND) : asked.limit);
   const title = question.words.map(([typed]) => typed).join(' ');
   const rows = await tx.execute(sql`
-    with own_job as materialized (
-      select job_id from search_entry where practice_id = ${practiceId} and person_id = ${personId} and job_id is not null
-      union select job_id from job_person where practice_id = ${practiceId} and person_id = ${personId}
-    ), graded as (
-      select e.kind, e.id, e.title, e.standing, e.changed_at,
-        e.person_id = ${personId} or e.job_id in (select job_id from own_job) as own,
-        case when e.mark_key = ${question.key} then ${GRADES.mark}::int
-          when ${question.key} <> '' and starts_with(e.mark_key, ${question.key}) then ${GRADES.markBegins}
-          when starts_with(lower(e.title), ${title}) then ${GRADES.titleBegins}
-          when e.names @@ ${allWords(question)}::tsquery then ${GRADES.names}
-          else ${GRADES.words} end as grade
-      from search_entry e join search_matches(${anyReading(question)}::tsquery) m on m.kind = e.kind and m.id = e.id
-      where e.practice_id = ${practiceId}
-    ), placed as (
-      select kind, id, grade, count(*) over (partition by kind)::int as total,
-        row_number() over (partition by kind order by grade, standing, own desc nulls last, changed_at desc, title, id) as place
-      from graded
+    with open_job as materialized (
+      select id, created_by_id = ${personId} or id in (select job_id from job_person where person_id = ${personId}) as own
+      from job where practice_id = ${practiceId}
+    ), matched as materialized (
+      select m.kind, m.id, m.grade, m.standing, m.changed_at, m.person_id = ${personId} or coalesce(j.own, false) as own
+      from search_matches(${anyReading(question)}::tsquery, ${allWords(question)}::tsquery, ${question.key}, ${title}) m
+      left join open_job j on j.id = m.job_id
+      where (m.job_id is null or j.id is not null)
+        and (m.reader_id is null or m.reader_id = ${personId} or ${may(actor, 'request.answer')})
+    ), counted as (
+      select kind, count(*)::int as total from matched group by kind
     )
-    select e.kind, e.mark, e.title, e.detail, e.state, e.place, left(e.body, 8000) as body, p.grade, p.total
-    from placed p join search_entry e on e.practice_id = ${practiceId} and e.kind = p.kind and e.id = p.id
-    where p.place > case p.kind when ${asked.kind ?? ''} then ${from}::int else 0 end
-      and p.place <= case p.kind when ${asked.kind ?? ''} then ${to}::int else ${SHOWN_OF_KIND}::int end
-    order by p.kind, p.place`);
+    select e.kind, e.mark, e.title, e.detail, e.state, e.place, left(e.body, 8000) as body, best.grade, counted.total
+    from counted cross join lateral (
+      select one.id, one.grade, row_number() over () as place from (
+        select id, grade from matched where matched.kind = counted.kind
+        order by grade, standing, own desc, changed_at desc, id
+        limit case counted.kind when ${asked.kind ?? ''} then ${asked.limit}::int else ${SHOWN_OF_KIND}::int end
+        offset case counted.kind when ${asked.kind ?? ''} then ${asked.from}::int else 0 end
+      ) one
+    ) best join search_entry e on e.practice_id = ${practiceId} and e.kind = counted.kind and e.id = best.id
+    order by e.kind, best.place`);
   return z.array(entryRow).parse(rows);
 }
 

@@ -81,7 +81,8 @@ export const mended = (question: Question, meant: ReadonlyMap<string, readonly s
   }),
 });
 
-const lexeme = (word: string): string => `'${word}':*`; // no word has a quote or a backslash in it
+/** A word as a query has it, by its beginning; a single letter begins too much. No word has a quote or a backslash. */
+const lexeme = (word: string): string => (word.length > 1 ? `'${word}':*` : `'${word}'`);
 
 /** Every word, each with what else it may mean; all of them begin a word of the entry. Text of a tsquery. */
 export const allWords = ({ words }: Question): string =>

@@ -3,6 +3,7 @@ import { sweepSignIns } from '@/features/account/sweep.server';
 import { BEAT, beat } from '@/features/admin/health.server';
 import { verifyAllChains } from '@/features/audit/audit.server';
 import { resumeImpacts, runImpact } from '@/features/impact/weigh.server';
+import { resumeImports, runImport } from '@/features/imports/work.server';
 import { keepSending, readMailing } from '@/features/notice/mailer.server';
 import { proveIssued, resumeProofs, runProof } from '@/features/proof/prove.server';
 import { remindOfReviews } from '@/features/review/remind.server';
@@ -25,12 +26,14 @@ const handlers: Handlers = {
   },
   'run-proof': runProof,
   'run-impact': runImpact,
+  'run-import': runImport,
 };
 
 /** Goes on with what a worker that is gone left behind. */
 async function resumeRuns(): Promise<void> {
   await resumeProofs();
   await resumeImpacts();
+  await resumeImports();
 }
 
 /** Works the queue, and gives a sign of life: late by one database failover, never dead by it. */

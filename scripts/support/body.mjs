@@ -17,7 +17,8 @@ const PROBLEMS = {
 };
 
 /** Whether the body is a file, which is passed on as it comes and never held whole. */
-export const isUpload = ({ method, url }) => method === 'POST' && url.split('?', 1)[0] === '/api/v1/imports';
+export const isUpload = ({ method, url }) => UPLOADS.test(`${method} ${url.split('?', 1)[0]}`);
+const UPLOADS = /^(POST \/api\/v1\/imports|PUT \/api\/v1\/imports\/[\w-]+\/source)$/;
 
 export const refusesLength = (request) =>
   Number(request.headers['content-length'] ?? 0) > (isUpload(request) ? MOST_OF_FILE : MOST);

@@ -19,12 +19,13 @@ export interface RunTask {
 export interface Asked {
   readonly 'run-proof': RunTask;
   readonly 'run-impact': RunTask;
+  readonly 'run-import': RunTask;
 }
 
 type ClockTask = keyof typeof SCHEDULE;
 type AskedTask = keyof Asked;
 const CLOCK_TASKS = Object.keys(SCHEDULE) as readonly ClockTask[];
-const ASKED_TASKS = ['run-proof', 'run-impact'] as const satisfies readonly AskedTask[];
+const ASKED_TASKS = ['run-proof', 'run-impact', 'run-import'] as const satisfies readonly AskedTask[];
 
 /** The library's own, from which it sends what is due by the clock. */
 const CLOCK_QUEUE = '__pgboss__send-it';

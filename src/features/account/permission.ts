@@ -79,6 +79,7 @@ const RULES = {
     'What a document says is confirmed against its source by a librarian.',
     grant(['librarian']),
   ),
+  'library.import': rule('Section tables are imported by a librarian.', grant(['librarian'])),
   'library.set-review': rule('Review dates are set by a librarian.', grant(['librarian'])),
   'library.trace': rule(
     'Uses in jobs for named people are listed for a librarian or a principal.',

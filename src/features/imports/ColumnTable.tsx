@@ -1,0 +1,150 @@
+import type {
+  Answer,
+  Field,
+  MappedColumn,
+  Mapping,
+  RecognisedColumn,
+} from '@/features/section/import/contract';
+import { FIELD_NAMES, FIELDS, unitsOf, unitWords } from './fields';
+
+interface ColumnTableProps {
+  readonly mapping: Mapping;
+  readonly recognised: readonly RecognisedColumn[];
+  readonly preview: readonly (readonly string[])[];
+  readonly isFixed: boolean;
+  readonly onAnswer: (answer: Answer) => void;
+}
+
+/** Each column of the file: its first cells, what it goes to, in which unit it is, and what its first row reads then. */
+export function ColumnTable({ mapping, recognised, preview, isFixed, onAnswer }: ColumnTableProps) {
+  const byIndex = new Map(recognised.map((one) => [one.index, one]));
+  return (
+    <table className="schedule import-columns">
+      <thead>
+        <tr>
+          <th scope="col">In the file</th>
+          <th scope="col" colSpan={3}>
+            First three rows
+          </th>
+          <th scope="col">
+            <span className="sr-only">goes to</span>
+          </th>
+          <th scope="col">Goes to</th>
+          <th scope="col">Unit in file</th>
+          <th scope="col" className="figure">
+            First row reads
+          </th>
+        </tr>
+      </thead>
+      <tbody>
+        {mapping.columns.map((column) => (
+          <ColumnRow
+            key={column.index}
+            column={column}
+            recognised={byIndex.get(column.index)}
+            reads={preview[0]?.[column.index]}
+            isFixed={isFixed}
+            onAnswer={onAnswer}
+          />
+        ))}
+      </tbody>
+    </table>
+  );
+}
+
+interface RowProps {
+  readonly column: MappedColumn;
+  readonly recognised: RecognisedColumn | undefined;
+  readonly reads: string | undefined;
+  readonly isFixed: boolean;
+  readonly onAnswer: (answer: Answer) => void;
+}
+
+function ColumnRow({ column, recognised, reads, isFixed, onAnswer }: RowProps) {
+  const { index, heading, field, unit } = column;
+  const isNumber = field !== null && FIELDS[field].quantity !== null;
+  const isAsked = isNumber && unit === null;
+  // What a heading means by the axes is asked for in words.
+  const isUnsure = field !== null && !column.byAxes && recognised?.confidence === 'unsure';
+  return (
+    <tr data-left-out={field === null || undefined} title={recognised?.reason}>
+      <th scope="row">{heading || `Column ${index + 1}`}</th>
+      {[0, 1, 2].map((place) => (
+        <td key={place} className="raw figure">
+          {recognised?.samples[place] ?? ''}
+        </td>
+      ))}
+      <td className="arrow">
+        <Arrow isDashed={field === null} />
+      </td>
+      <td className="goes">
+        <select
+          className="input"
+          aria-label={`What ${heading} is`}
+          aria-invalid={isUnsure || undefined}
+          disabled={isFixed}
+          value={field ?? ''}
+          onChange={({ target }) =>
+            onAnswer({ kind: 'field', column: index, value: (target.value || null) as Field | null })
+          }
+        >
+          <option value="">Leave out</option>
+          {FIELD_NAMES.map((name) => (
+            <option key={name} value={name}>
+              {FIELDS[name].label}
+            </option>
+          ))}
+        </select>
+      </td>
+      <UnitCell {...{ column, isFixed, onAnswer }} />
+      <td className="figure reads" data-asked={isAsked || undefined}>
+        {field === null
+          ? '–'
+          : isAsked
+            ? 'unit not said'
+            : `${reads ?? recognised?.samples[0] ?? ''} ${unit ? unitWords(unit) : ''}`}
+      </td>
+    </tr>
+  );
+}
+
+function UnitCell({ column, isFixed, onAnswer }: Pick<RowProps, 'column' | 'isFixed' | 'onAnswer'>) {
+  const { index, heading, field, unit, factor } = column;
+  const isAsked = unit === null;
+  if (field === null || FIELDS[field].quantity === null) return <td className="unit">–</td>;
+  return (
+    <td className="unit">
+      <select
+        className="input"
+        aria-label={`Unit of ${heading}`}
+        data-asked={isAsked || undefined}
+        disabled={isFixed}
+        value={unit ?? ''}
+        onChange={({ target }) => onAnswer({ kind: 'unit', column: index, value: target.value })}
+      >
+        {isAsked && <option value="">Say which</option>}
+        {unitsOf(field, unit).map((one) => (
+          <option key={one} value={one}>
+            {unitWords(one)}
+          </option>
+        ))}
+      </select>
+      {factor !== 1 && <small>times {factor}</small>}
+    </td>
+  );
+}
+
+function Arrow({ isDashed }: { isDashed: boolean }) {
+  return (
+    <svg
+      width="26"
+      height="10"
+      viewBox="0 0 26 10"
+      aria-hidden="true"
+      fill="none"
+      className="inline stroke-ink-2"
+    >
+      {isDashed ? <path d="M1 5h22" strokeDasharray="4 3" /> : <path d="M1 5h23M18 2l7 3-7 3" />}
+    </svg>
+  );
+}

@@ -1,0 +1,169 @@
+import { type FormEvent, useState } from 'react';
+import { Button } from '@/components/ui/Button';
+import { mayAccept } from '@/features/section/import';
+import type { Finding } from '@/features/section/import/contract';
+import type { Accept, Fixes, ImportView } from './imports';
+
+export interface Deeds {
+  readonly onFix: (fixes: Partial<Fixes>) => void;
+  readonly onAccept: (accept: Accept) => void;
+  /** Nothing can be done now: somebody is at it, or may not. */
+  readonly isOff: boolean;
+}
+
+interface FindingItemProps extends Deeds {
+  readonly finding: Finding;
+  readonly accepted: ImportView['acceptances'][number] | undefined;
+}
+
+const MARKS = { error: '×', warning: '!', note: 'i' } as const;
+
+/** One finding: where it is, what was read and expected, why, and what can be done about it. */
+export function FindingItem({ finding, accepted, isOff, onFix, onAccept }: FindingItemProps) {
+  const { key, severity, line, heading, designation, message, read, expected, formula } = finding;
+  return (
+    <li
+      id={`finding-${key}`}
+      data-severity={severity}
+      data-finding={key}
+      tabIndex={-1}
+      className="import-finding"
+    >
+      <span className="mark" aria-hidden="true">
+        {MARKS[severity]}
+      </span>
+      <span className="text-ink-2">
+        <span className="sr-only">{severity}, </span>
+        {line === null ? 'whole column' : `line ${line}`}
+      </span>
+      <div className="min-w-0">
+        <p className="wrap-anywhere">
+          <b className="font-semibold">{[designation, heading].filter(Boolean).join(', ')}</b> {message}
+        </p>
+        <Values {...{ read, expected, formula }} />
+        {accepted ? (
+          <p className="mt-4 text-ink-2">
+            Accepted by {accepted.by}: <i>{accepted.reason}</i>
+          </p>
+        ) : (
+          !isOff && <Choices {...{ finding, onFix, onAccept }} />
+        )}
+      </div>
+    </li>
+  );
+}
+
+function Values({ read, expected, formula }: Pick<Finding, 'read' | 'expected' | 'formula'>) {
+  if (read === '' && expected === null && formula === null) return null;
+  return (
+    <dl className="mt-2 flex flex-wrap gap-x-14 text-note text-ink-2">
+      {read !== '' && (
+        <div>
+          <dt className="inline">read </dt>
+          <dd className="inline wrap-anywhere text-ink">
+            {read.length > 120 ? `${read.slice(0, 120)}…` : read}
+          </dd>
+        </div>
+      )}
+      {expected !== null && (
+        <div>
+          <dt className="inline">expected </dt>
+          <dd className="inline text-ink">{expected}</dd>
+        </div>
+      )}
+      {formula !== null && (
+        <div>
+          <dt className="sr-only">by</dt>
+          <dd className="inline">{formula}</dd>
+        </div>
+      )}
+    </dl>
+  );
+}
+
+type ChoicesProps = Pick<FindingItemProps, 'finding' | 'onFix' | 'onAccept'>;
+
+/** What the report offers, then a value typed by hand, leaving the row out, or accepting it with a reason. */
+function Choices({ finding, onFix, onAccept }: ChoicesProps) {
+  const { key, line, column, fixes } = finding;
+  const [isTyping, setTyping] = useState(false);
+  const [isAccepting, setAccepting] = useState(false);
+  const drops = fixes.some(({ edit }) => edit.kind === 'drop_row');
+  return (
+    <div className="mt-4 flex flex-wrap items-center gap-x-14 gap-y-4">
+      {fixes.map(({ label }, fix) => (
+        <Button key={label} tone="text" onClick={() => onFix({ apply: [{ finding: key, fix }] })}>
+          {label}
+        </Button>
+      ))}
+      {line !== null && column !== null && (
+        <Button tone="text" aria-expanded={isTyping} onClick={() => setTyping(!isTyping)}>
+          Type another value
+        </Button>
+      )}
+      {line !== null && !drops && finding.severity === 'error' && (
+        <Button tone="text" onClick={() => onFix({ leave_out: [line] })}>
+          Leave out line {line}
+        </Button>
+      )}
+      {mayAccept(finding) && (
+        <Button tone="text" aria-expanded={isAccepting} onClick={() => setAccepting(!isAccepting)}>
+          Accept
+        </Button>
+      )}
+      {isTyping && line !== null && column !== null && (
+        <OneField
+          label={`Value of ${finding.heading} in line ${line}`}
+          word="Put right"
+          start={finding.read}
+          onGiven={(value) => onFix({ cells: [{ line, column, value }] })}
+        />
+      )}
+      {isAccepting && (
+        <OneField
+          label="Why it is right as it stands"
+          word="Accept with this reason"
+          start=""
+          least={3}
+          onGiven={(reason) => onAccept({ keys: [key], reason })}
+        />
+      )}
+    </div>
+  );
+}
+
+interface OneFieldProps {
+  readonly label: string;
+  readonly word: string;
+  readonly start: string;
+  readonly least?: number;
+  readonly onGiven: (value: string) => void;
+}
+
+/** A field and its button, in the line. */
+export function OneField({ label, word, start, least = 0, onGiven }: OneFieldProps) {
+  const [value, setValue] = useState(start);
+  const send = (event: FormEvent) => {
+    event.preventDefault();
+    if (value.trim().length >= least) onGiven(value.trim());
+  };
+  return (
+    <form onSubmit={send} className="flex w-full flex-wrap items-end gap-10">
+      <label className="min-w-0 flex-1 basis-208">
+        <span className="caps mb-2 block">{label}</span>
+        <input
+          className="input"
+          value={value}
+          minLength={least || undefined}
+          required={least > 0}
+          // biome-ignore lint/a11y/noAutofocus: it appears because it was asked for
+          autoFocus
+          onChange={({ target }) => setValue(target.value)}
+        />
+      </label>
+      <Button type="submit" size="small">
+        {word}
+      </Button>
+    </form>
+  );
+}

@@ -1,0 +1,78 @@
+import { ZoneHeading } from '@/components/ui/ZoneHeading';
+import type { Answer } from '@/features/section/import/contract';
+import type { Deeds } from './FindingItem';
+import { FindingList } from './FindingList';
+import type { ImportView } from './imports';
+import { ProgressZone } from './ProgressZone';
+import { QuestionList } from './QuestionList';
+import { countWords } from './words';
+
+interface FindingZoneProps extends Omit<Deeds, 'isOff'> {
+  readonly view: ImportView;
+  readonly mapping: ImportView['mapping'];
+  readonly underWay: boolean;
+  readonly isEditable: boolean;
+  readonly onAnswer: (answer: Answer) => void;
+  readonly onCancel: () => void;
+}
+
+/** First what only a person can say, then how far the check is, then what it found. */
+export function FindingZone(props: FindingZoneProps) {
+  const { view, underWay, isEditable, onFix, onAccept, onCancel } = props;
+  const { state } = view;
+  if (state === 'mapping' || state === 'failed')
+    return (
+      <section className="zone">
+        <ZoneHeading letter="B">What the file does not say</ZoneHeading>
+        <Asked {...props} />
+      </section>
+    );
+  return (
+    <section className="zone">
+      <ZoneHeading letter="B" note={underWay ? undefined : <Counts view={view} />}>
+        Rows with problems
+      </ZoneHeading>
+      {underWay ? (
+        <ProgressZone view={view} onCancel={view.may_act ? onCancel : undefined} />
+      ) : (
+        <FindingList
+          view={view}
+          isOff={!isEditable || state !== 'findings'}
+          onFix={onFix}
+          onAccept={onAccept}
+        />
+      )}
+    </section>
+  );
+}
+
+const counted = (count: number, one: string): string =>
+  `${countWords(count)} ${one}${count === 1 ? '' : 's'}`;
+
+function Counts({ view: { report } }: { view: ImportView }) {
+  if (!report) return null;
+  return (
+    <>
+      <b className="font-semibold text-error">{counted(report.errors, 'error')}</b>,{' '}
+      <b className="font-semibold text-ochre-ink">{counted(report.warnings, 'warning')}</b>
+    </>
+  );
+}
+
+function Asked({ view: { recognised }, mapping, isEditable, onAnswer }: FindingZoneProps) {
+  const { questions } = recognised;
+  return (
+    <div className="grid gap-14">
+      {questions.length === 0 && (
+        <p>Everything that the check needs stands in the file. Look at the columns, then have it checked.</p>
+      )}
+      {questions.some(({ kind }) => kind === 'unit') && (
+        <p>Some columns have no unit in their heading. Say it in zone A.</p>
+      )}
+      <QuestionList {...{ questions, mapping, onAnswer }} isFixed={!isEditable} />
+      <p className="text-ink-2">
+        Nothing becomes an edition yet: the check is a dry run over every row, and its report is kept.
+      </p>
+    </div>
+  );
+}

@@ -1,0 +1,52 @@
+import { type DimensionName, unitText } from '@/engine/quantity';
+import type { Field, NumberField } from '@/features/section/import/contract';
+import { offeredUnits } from '@/features/section/import/mapping';
+
+interface FieldWords {
+  readonly label: string;
+  readonly quantity: DimensionName | null;
+}
+
+const length = (label: string): FieldWords => ({ label, quantity: 'length' });
+const modulus = (label: string): FieldWords => ({ label, quantity: 'section_modulus' });
+
+/** What a column can hold, as the mapping names it. */
+export const FIELDS: Readonly<Record<Field, FieldWords>> = {
+  designation: { label: 'Designation', quantity: null },
+  shape: { label: 'Shape', quantity: null },
+  computed: { label: 'Names of what is computed', quantity: null },
+  mass: { label: 'Mass m', quantity: 'mass_per_length' },
+  h: length('Depth h'),
+  b: length('Width b'),
+  tw: length('Web tw'),
+  tf: length('Flange tf'),
+  t: length('Wall t'),
+  r: length('Root radius r'),
+  dClear: length('Clear depth d'),
+  area: { label: 'Area A', quantity: 'area' },
+  iMajor: { label: 'Second moment, major', quantity: 'second_moment' },
+  iMinor: { label: 'Second moment, minor', quantity: 'second_moment' },
+  wElMajor: modulus('Elastic modulus, major'),
+  wElMinor: modulus('Elastic modulus, minor'),
+  wPlMajor: modulus('Plastic modulus, major'),
+  wPlMinor: modulus('Plastic modulus, minor'),
+  rMajor: length('Radius of gyration, major'),
+  rMinor: length('Radius of gyration, minor'),
+  j: { label: 'Torsion constant', quantity: 'second_moment' },
+  iw: { label: 'Warping constant', quantity: 'warping' },
+};
+export const FIELD_NAMES = Object.keys(FIELDS) as readonly Field[];
+
+const plain = (unit: string): string => unit.replace('^', '');
+
+/** The units that a column may be in, its own among them however it is written. */
+export function unitsOf(field: Field | null, own: string | null): readonly string[] {
+  const offered = field === null ? [] : offeredUnits(field);
+  if (own === null) return offered;
+  return [own, ...offered.filter((one) => plain(one) !== plain(own))];
+}
+
+export const isNumber = (field: Field): field is NumberField => FIELDS[field].quantity !== null;
+
+/** "cm4" or "cm^4" as it is printed: "cm⁴". */
+export const unitWords = (unit: string): string => unitText(plain(unit));

@@ -1,0 +1,11 @@
+import type { Finding } from '@/features/section/import/contract';
+import type { ImportView } from './imports';
+
+/** Who answered for a finding, and why; of itself or with all of its cause. Undefined where nobody did. */
+export function answerOf(acceptances: ImportView['acceptances']) {
+  const byKey = new Map(acceptances.map((one) => [one.key, one]));
+  return ({ key, group }: Pick<Finding, 'key' | 'group'>): string | undefined => {
+    const found = byKey.get(key) ?? byKey.get(group);
+    return found && `accepted by ${found.by}: ${found.reason}`;
+  };
+}

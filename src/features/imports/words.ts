@@ -1,0 +1,45 @@
+import type { Cause } from '@/features/section/import/contract';
+import type { ImportPhase, ImportState } from './state';
+
+export const STATE_LABELS: Readonly<Record<ImportState, string>> = {
+  mapping: 'Waits for its columns',
+  checking: 'Being checked',
+  findings: 'Checked',
+  committing: 'Being written',
+  committed: 'An edition',
+  cancelled: 'Cancelled',
+  failed: 'Broken off',
+};
+
+export const PHASE_WORDS: Readonly<Record<ImportPhase, string>> = {
+  reading: 'Reading the file',
+  checking: 'Checking rows',
+  writing: 'Writing rows into the edition',
+};
+
+export const DELIMITER_WORDS = { ',': 'comma', ';': 'semicolon', '\t': 'tab', '|': 'bar' } as const;
+export const MARK_WORDS = { '.': 'point', ',': 'comma' } as const;
+
+export const LANGUAGE_WORDS: Readonly<Record<string, string>> = {
+  en: 'English',
+  de: 'German',
+  fr: 'French',
+  it: 'Italian',
+  es: 'Spanish',
+  nl: 'Dutch',
+  sv: 'Swedish',
+};
+
+/** "columns_swapped" in a sentence. */
+export const causeWords = (cause: Cause): string => cause.replaceAll('_', ' ');
+
+const GROUPED = new Intl.NumberFormat('en-GB');
+/** "12 400", with a thin space that does not break. */
+export const countWords = (count: number): string => GROUPED.format(count).replaceAll(',', '\u202f');
+
+export const sizeWords = (bytes: number): string =>
+  bytes < 1000
+    ? `${bytes} B`
+    : bytes < 1e6
+      ? `${Math.round(bytes / 1000)} kB`
+      : `${(bytes / 1e6).toFixed(1)} MB`;

@@ -303,7 +303,7 @@ export const askCommit = (actor: Actor, id: string, version: number, body: Commi
       state: 'committing',
       phase: 'writing',
       done: 0,
-      total: row.facts?.rowCount ?? 0,
+      total: row.facts?.lineCount ?? 0,
       revisionId: made.revisionId,
     });
     await rememberMapping(tx, actor, row, about);

@@ -13,8 +13,8 @@ export const STATE_LABELS: Readonly<Record<ImportState, string>> = {
 
 export const PHASE_WORDS: Readonly<Record<ImportPhase, string>> = {
   reading: 'Reading the file',
-  checking: 'Checking rows',
-  writing: 'Writing rows into the edition',
+  checking: 'Checking lines',
+  writing: 'Writing lines into the edition',
 };
 
 export const DELIMITER_WORDS = { ',': 'comma', ';': 'semicolon', '\t': 'tab', '|': 'bar' } as const;

@@ -107,7 +107,7 @@ async function survey(row: ImportRow): Promise<boolean> {
 }
 
 const known = (row: ImportRow, facts: FileFacts) => ({
-  total: facts.rowCount,
+  total: facts.lineCount,
   facts,
   report: { ...reportOf(facts), version: row.version, against: null },
 });

@@ -11,6 +11,7 @@ import {
   type RowChange,
   type RowDifference,
 } from './edition-changes';
+import type { SectionRow } from './section';
 
 interface Asked {
   readonly table: string;
@@ -109,3 +110,19 @@ const toValue = (name: ComparedColumn, from: number | null, to: number | null) =
   to,
   share: from !== null && to !== null && from !== 0 ? (to - from) / from : null,
 });
+
+/** How many rows stand in an edition by their designation, and how many of these have other values there. */
+export async function countAgainst(
+  tx: Tx,
+  practiceId: string,
+  revisionId: string,
+  rows: readonly SectionRow[],
+): Promise<{ matched: number; changed: number }> {
+  const given = rows.map((row) => ({ key: row.key, ...Object.fromEntries(COMPARED.map((name) => [name, row[name]])) }));
+  const columns = sql.raw(COMPARED.map((name) => `${name} float8`).join(', '));
+  const [found] = await tx.execute<{ matched: number; changed: number }>(sql`
+    select count(*)::int as matched, count(*) filter (where ${sql.join(COMPARED.map(differs), sql` or `)})::int as changed
+    from jsonb_to_recordset(${JSON.stringify(given)}::text::jsonb) as n (key text, ${columns})
+    join section o on o.practice_id = ${practiceId} and o.revision_id = ${revisionId} and o.designation_key = n.key`);
+  return found ?? { matched: 0, changed: 0 };
+}

@@ -17,12 +17,14 @@ function difference(
   fields: readonly NumberField[],
   by: number,
 ): NumberField | null {
+  let given: NumberField | null = null; // by one of the two only
   for (const field of fields) {
     const [a, b] = [store.value(field, one), store.value(field, other)];
     if (Number.isNaN(a) && Number.isNaN(b)) continue;
-    if (!(Math.abs(a - b) <= by * Math.max(Math.abs(a), Math.abs(b)))) return field;
+    if (Number.isNaN(a) || Number.isNaN(b)) given ??= field;
+    else if (Math.abs(a - b) > by * Math.max(Math.abs(a), Math.abs(b))) return field;
   }
-  return null;
+  return given;
 }
 
 type Twice = { first: number; second: number; key: string };

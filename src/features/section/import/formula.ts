@@ -3,7 +3,7 @@ import type { Finding, SectionDimensions, TabulatedName } from '@/engine/section
 import type { Values } from './reading';
 
 const FIGURES = { significant: 4 };
-const mm = (metres: number) => formatNumber(toUnit(metres, 'mm'), FIGURES);
+const mm = (metres: number) => String(Number(toUnit(metres, 'mm').toPrecision(4)));
 
 const inCm = (value: number, unit: string) =>
   `${formatNumber(toUnit(value, unit), FIGURES)} ${unit.replace('2', '²').replace('3', '³').replace('4', '⁴')}`;

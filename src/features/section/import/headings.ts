@@ -76,7 +76,11 @@ export function readUnitText(text: string): { unit: string | null; factor: numbe
   const unit = withPowers(text).replaceAll(/^[([]|[)\]]$/g, '');
   const power = /[x×*]?\s*10\^(-?\d+)\s*[x×*·]?/.exec(unit);
   return {
-    unit: unit.replace(power?.[0] ?? '', '').trim() || null,
+    unit:
+      unit
+        .replace(power?.[0] ?? '', '')
+        .replaceAll('^', '')
+        .trim() || null,
     factor: 10 ** Number(power?.[1] ?? 0),
   };
 }
@@ -135,11 +139,13 @@ export type ReadHeading = Pick<MappedColumn, 'field' | 'unit' | 'factor' | 'byAx
 
 /** What one heading means by itself; `d` and `t` are settled by the columns beside them. */
 export function meaningOf(heading: string): ReadHeading {
-  const { name, unit, factor } = readHeading(heading);
+  const written = readHeading(heading);
+  const isMass = written.unit === null && unitFactor(written.name, 'mass_per_length').ok; // headed "kg/m"
+  const { name, unit, factor } = isMass ? { ...written, unit: written.name } : written;
   const plain = plainName(name);
   const isA = (quantity: DimensionName) => unit !== null && unitFactor(unit, quantity).ok;
   const named: Synonym | undefined =
-    plain === 'w' && isA('mass_per_length')
+    isMass || (plain === 'w' && isA('mass_per_length'))
       ? { field: 'mass', language: null }
       : plain === 'd'
         ? { field: 'h', language: null }

@@ -1,5 +1,4 @@
 import {
-  depthOf,
   dimensionFaults,
   type SectionDimensions,
   type SectionProperties,
@@ -54,7 +53,8 @@ export function judgeLine(line: FileLine, plan: Plan, names: NameFacts): JudgedR
   if (faults.length > 0) return { ...without, findings: [...findings, ...faults] };
   const computed = sectionProperties(dimensions);
   const judged = judge(row, dimensions, computed, plan);
-  const named = depthOf(dimensions) > 0 ? nameFindings(row, plan, names) : [];
+  const isMassWrong = judged.some(({ cause }) => cause === 'mass_units' || cause === 'mass');
+  const named = nameFindings(row, plan, names).filter(({ cause }) => !(isMassWrong && cause === 'name_mass'));
   const all = judged.length + named.length === 0 ? findings : [...findings, ...judged, ...named];
   return { ...row, findings: all, dimensions, computed };
 }

@@ -1,4 +1,4 @@
-import { formatNumber, toUnit, unitText } from '@/engine/quantity';
+import { formatNumber, unitText } from '@/engine/quantity';
 import {
   type Finding as EngineFinding,
   plausibilityFindings,
@@ -102,9 +102,10 @@ function toFinding(found: EngineFinding, row: RowRead, d: SectionDimensions, pla
   };
   const value = row.values[found.property];
   if (!column || found.expected === null || value === undefined || found.rule === 'proportions') {
-    const fixes = exchange(found.rule, row, plan);
+    const fixes = exchange(found, row, plan);
+    const other = otherOf(found, row, plan);
     const words = found.cause ?? 'Compare the source';
-    return findingOf({ ...base, formula: found.formula, message: `${words}.`, fixes });
+    return findingOf({ ...base, expected: other, formula: found.formula, message: `${words}.`, fixes });
   }
   const expected = withUnit(found.expected, column);
   const formula = `${withNumbers(found, d, row.values, plan.mapping.density)} = ${expected}`;
@@ -162,11 +163,25 @@ function slipFinding(
   });
 }
 
+const EXCHANGED: Readonly<Partial<Record<TabulatedName, TabulatedName>>> = {
+  iMajor: 'iMinor',
+  wPlMajor: 'wElMajor',
+  wPlMinor: 'wElMinor',
+};
+const isExchange = (rule: string) => rule === 'axes' || rule === 'plastic_below_elastic';
+
+/** What stands in the other of two exchanged cells. */
+function otherOf({ rule, property }: EngineFinding, { line }: RowRead, plan: Plan): string | null {
+  const other = EXCHANGED[property];
+  const column = isExchange(rule) && other ? columnOf(plan, other) : undefined;
+  return column ? cellText(line.cells[column.index] ?? '') : null;
+}
+
 /** Cells of a row that are exchanged back. */
-function exchange(rule: string, row: RowRead, plan: Plan): Fix[] {
-  const pairs = { axes: ['iMajor', 'iMinor'], plastic_below_elastic: ['wElMajor', 'wPlMajor'] } as const;
-  if (rule !== 'axes' && rule !== 'plastic_below_elastic') return [dropRow(row.line.number)];
-  const [one, other] = pairs[rule].map((field) => columnOf(plan, field)?.index);
+function exchange({ rule, property }: EngineFinding, row: RowRead, plan: Plan): Fix[] {
+  const partner = EXCHANGED[property];
+  if (!isExchange(rule) || !partner) return [dropRow(row.line.number)];
+  const [one, other] = [property, partner].map((field) => columnOf(plan, field)?.index);
   if (one === undefined || other === undefined) return [dropRow(row.line.number)];
   const columns = [one, other] as const;
   const line = row.line.number;
@@ -176,5 +191,3 @@ function exchange(rule: string, row: RowRead, plan: Plan): Fix[] {
     dropRow(line),
   ];
 }
-
-export const inMillimetres = (value: number): string => formatNumber(toUnit(value, 'mm'), FIGURES);

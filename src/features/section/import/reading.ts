@@ -221,8 +221,8 @@ function missingFinding(
   const read = cellText(line.cells[column.index] ?? '');
   const isZero = /^[0.,]+$/.test(read) && read.includes('0');
   const message = isZero
-    ? `${read} stands for a value that is missing: ${FIELD_WORDS[field]} cannot be 0.`
-    : `The value of ${FIELD_WORDS[field]} is missing. Look it up in the source.`;
+    ? `${FIELD_WORDS[field]}: ${read} stands for a value that is missing. It cannot be 0.`
+    : `${FIELD_WORDS[field]}: the value is missing. Look it up in the source.`;
   const cause = isZero ? 'zero' : 'missing';
   const place = { line: line.number, printed, column, read };
   findings.push(cellFinding(place, { rule: 33, severity: 'error', cause, message }, [dropRow(line.number)]));

@@ -14,6 +14,7 @@ import type {
   Refusal,
 } from './contract';
 import { MOST_BYTES } from './contract';
+import { timberDensity } from './density';
 import { encodingOf, refusalOf } from './encoding';
 import { isUnit, knownHeadings, meaningOf, type ReadHeading, readUnitText, settle } from './headings';
 import { decimalMarkOf, thousandsMarksOf } from './marks';
@@ -185,6 +186,7 @@ export function recognise(head: Uint8Array, file: RecognisedFile): Recognition {
     density: STEEL,
     tubeStandard: 'EN 10210',
   };
+  mapping.density = timberDensity(mapping, rows) ?? mapping.density;
   return {
     ok: true,
     mapping,

@@ -1,4 +1,3 @@
-import type { ReactNode } from 'react';
 import { Button } from '@/components/ui/Button';
 import { supportLetter } from '@/engine/model';
 import type { Written } from '@/features/review/draft';
@@ -6,9 +5,10 @@ import { type Added, addHinge, addSegment, addSupport } from './add';
 import { SUPPORT_CHOICES } from './choices';
 import { listAt, type Pointer, textAt } from './edit';
 import { ChoiceAt, ExpressionAt, TextAt } from './fields';
-import { Part, Parts, Row } from './Part';
+import { Row } from './Part';
+import { PartList } from './PartList';
 import { useAdd } from './use-add';
-import { useDraft, useFaultAt, useListAt, useTextAt } from './use-editor';
+import { useDraft, useTextAt } from './use-editor';
 
 const WHEN_HELP = 'A condition such as ends == "both". Left empty: always.';
 
@@ -31,42 +31,6 @@ export function BeamZone() {
       <Segments />
       <Dimensions />
     </div>
-  );
-}
-
-interface ListProps {
-  readonly list: Pointer;
-  readonly label: string;
-  readonly empty: string;
-  readonly name: string;
-  readonly title: (one: unknown, index: number) => ReactNode;
-  readonly line: (one: unknown) => string;
-  readonly add: ReactNode;
-  readonly fields: (at: Pointer) => ReactNode;
-}
-
-/** A named list of parts of the beam. */
-export function PartList({ list, label, empty, name, title, line, add, fields }: ListProps) {
-  const entries = useListAt(list);
-  return (
-    <section aria-label={label}>
-      <h3 className="caps mb-6">{label}</h3>
-      <Parts label={label} empty={empty} count={entries.length} fault={useFaultAt(list)} add={add}>
-        {entries.map((one, index) => (
-          <Part
-            // biome-ignore lint/suspicious/noArrayIndexKey: a part has no identity but its place
-            key={index}
-            at={`${list}/${index}`}
-            name={`${name} ${index + 1}`}
-            count={entries.length}
-            title={title(one, index)}
-            line={line(one)}
-          >
-            {fields(`${list}/${index}`)}
-          </Part>
-        ))}
-      </Parts>
-    </section>
   );
 }
 

@@ -1,4 +1,4 @@
-import { type ComponentType, memo, useEffect, useRef, useState } from 'react';
+import { type ComponentType, memo, useDeferredValue, useEffect, useRef, useState } from 'react';
 import { takesTyping } from '@/components/ui/keys';
 import { ZoneHeading } from '@/components/ui/ZoneHeading';
 import { type Autosave, startAutosave } from './autosave.api';
@@ -94,9 +94,12 @@ const FormZones = memo(function FormZones({ data }: { readonly data: DraftPageDa
   ));
 });
 
+const Drawing = memo(DraftDrawing);
+
+/** Follows the form a moment behind: whoever types waits for no drawing. */
 function DrawingZone({ data }: { readonly data: DraftPageData }) {
-  const editor = useEditor();
-  return <DraftDrawing editor={editor} system={data.system} />;
+  const editor = useDeferredValue(useEditor());
+  return <Drawing editor={editor} system={data.system} />;
 }
 
 /** Ctrl-Z and Ctrl-Shift-Z take back and do again, in a field too: the draft's history knows what was typed there. */

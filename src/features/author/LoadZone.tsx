@@ -1,10 +1,10 @@
 import { Button } from '@/components/ui/Button';
 import { addCouple, addCurvature, addLine, addPoint, addPointRows, addSettlement } from './add';
-import { PartList } from './BeamZone';
 import { listAt, type Pointer, textAt } from './edit';
 import { ChoiceAt, ExpressionAt } from './fields';
 import { declaredGroups } from './groups';
 import { Row } from './Part';
+import { PartList } from './PartList';
 import { useAdd } from './use-add';
 import { useAt, useSnapshot, useTextAt } from './use-editor';
 import { SceneContext } from './use-kinds';
@@ -21,6 +21,7 @@ export function LoadZone() {
   const document = useSnapshot(({ history }) => history.document);
   return (
     <PartList
+      isAlone
       list="/beam/loads"
       label="Loads"
       empty="None yet."

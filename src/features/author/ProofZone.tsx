@@ -2,11 +2,11 @@ import { useState } from 'react';
 import { Button } from '@/components/ui/Button';
 import { FieldNote } from '@/components/ui/Field';
 import { readProof } from './author.api';
-import { PartList } from './BeamZone';
 import { ExpectFields } from './ExpectFields';
 import { listAt, type Pointer, textAt } from './edit';
 import { ChoiceAt, QuantityAt, TextAt } from './fields';
 import { Row } from './Part';
+import { PartList } from './PartList';
 import { addCase, addWorstCase } from './proof-cases';
 import { useSourceChoices } from './SourceZone';
 import { StatedFields } from './StatedFields';
@@ -22,6 +22,7 @@ export function ProofZone(props: ProofZoneProps) {
   const press = useAdd();
   return (
     <PartList
+      isAlone
       list="/proof_cases"
       label="Proof cases"
       empty="None yet. Three at least are run on every revision: printed figures, closed forms, limits."

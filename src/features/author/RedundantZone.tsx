@@ -2,12 +2,12 @@ import { useMemo } from 'react';
 import { Button } from '@/components/ui/Button';
 import { supportLetter } from '@/engine/model';
 import { useRestedValue } from '@/features/template/use-live';
-import { PartList } from './BeamZone';
 import { choicesOf } from './choices';
 import { type Pointer, textAt } from './edit';
 import { ChoiceAt, ExpressionAt, useReadOnly } from './fields';
 import { sameValue } from './merge';
 import { Row } from './Part';
+import { PartList } from './PartList';
 import { releasable, type WrittenRedundant } from './redundants';
 import { useDraft, useListAt, useSnapshot, useTextAt } from './use-editor';
 

@@ -1,9 +1,9 @@
 import { Button } from '@/components/ui/Button';
 import { freshId } from './add';
-import { PartList } from './BeamZone';
 import { listAt, type Pointer, textAt, valueAt } from './edit';
 import { ChoiceAt, ExpressionAt, TextAt } from './fields';
 import { Row } from './Part';
+import { PartList } from './PartList';
 import { SelectorFields } from './SelectorFields';
 import { useSourceChoices } from './SourceZone';
 import { beginningOf, quantityDimension, quantityWords } from './selectors';
@@ -20,6 +20,7 @@ export function ResultZone() {
     }));
   return (
     <PartList
+      isAlone
       list="/results"
       label="Closed forms"
       empty="None. A template may do without; what has a formula is proven by it."

@@ -1,11 +1,11 @@
 import { Button } from '@/components/ui/Button';
 import { freshId } from './add';
-import { PartList } from './BeamZone';
 import { SEVERITY_CHOICES } from './choices';
 import { type Pointer, textAt } from './edit';
 import { ChoiceAt, ExpressionAt, LongTextAt, QuantityAt, TextAt } from './fields';
 import { RepeatAt } from './LoadZone';
 import { Row } from './Part';
+import { PartList } from './PartList';
 import { StatedFields } from './StatedFields';
 import { useAdd } from './use-add';
 import { useDraft, useTextAt } from './use-editor';
@@ -25,6 +25,7 @@ export function RuleZone() {
   };
   return (
     <PartList
+      isAlone
       list="/rules"
       label="Rules"
       empty="None yet. Every beam has its limits: a slender one, one that does not lift."

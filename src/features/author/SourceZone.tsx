@@ -1,9 +1,9 @@
 import { Button } from '@/components/ui/Button';
 import { freshId } from './add';
-import { PartList } from './BeamZone';
 import { listAt, type Pointer, textAt } from './edit';
 import { CheckAt, LongTextAt, TextAt } from './fields';
 import { Row } from './Part';
+import { PartList } from './PartList';
 import { useAdd } from './use-add';
 import { useDraft, useListAt } from './use-editor';
 
@@ -30,6 +30,7 @@ export function SourceZone() {
   };
   return (
     <PartList
+      isAlone
       list="/sources"
       label="Sources"
       empty="None yet. A template rests on one at least: a publication, or a derivation of the practice’s own."

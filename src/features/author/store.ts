@@ -95,7 +95,15 @@ export class DraftStore {
 
   /** Takes in what came of a merge. What was done before cannot be undone any more: it was of another document. */
   takeIn({ document, ...change }: Content, conflicts: readonly Conflict[], mergedAt: Date | null): void {
-    this.put({ history: newHistory(document), change, conflicts, mergedAt, selected: null });
+    const { selected } = this.snapshot;
+    const isStill = selected !== null && valueAt(document, selected) === valueAt(this.document, selected);
+    this.put({
+      history: newHistory(document),
+      change,
+      conflicts,
+      mergedAt,
+      selected: isStill ? selected : null,
+    });
   }
 
   readonly decideConflict = (conflict: Conflict, whose: 'mine' | 'theirs'): void => {

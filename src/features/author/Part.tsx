@@ -1,9 +1,10 @@
 import { type ReactNode, useEffect, useRef } from 'react';
 import { Button } from '@/components/ui/Button';
 import { FieldNote } from '@/components/ui/Field';
+import { removal, reordering, whyKept } from './drawing/change';
 import { type Pointer, parentOf } from './edit';
 import { useReadOnly } from './fields';
-import { useDraft, useFaultAt, useFaultIn, useIsSelected } from './use-editor';
+import { useDraft, useFaultAt, useFaultIn, useIsSelected, useSnapshot } from './use-editor';
 
 interface PartProps {
   readonly at: Pointer;
@@ -31,7 +32,7 @@ export function Part({ at, title, line, name, count, children }: PartProps) {
     <li
       ref={place}
       data-part={at}
-      className={`scroll-mt-20 border-b border-rule ${isOpen ? 'border-l-3 border-l-ochre pl-10' : ''}`}
+      className={`scroll-mt-200 scroll-mb-70 border-b border-rule ${isOpen ? 'border-l-3 border-l-ochre pl-10' : ''}`}
     >
       <button
         type="button"
@@ -61,16 +62,23 @@ export function Part({ at, title, line, name, count, children }: PartProps) {
 
 function PartActions({ at, name, count }: Pick<PartProps, 'at' | 'name' | 'count'>) {
   const store = useDraft();
-  if (useReadOnly()) return null;
+  const isReadOnly = useReadOnly();
+  const why = useSnapshot(({ history }) => whyKept(history.document, at));
+  if (isReadOnly) return null;
   const list = parentOf(at);
   const index = Number(at.slice(list.length + 1));
   const move = (to: number) => {
-    store.edit({ do: 'move', at, to });
+    store.edit(...reordering(store.document, at, to));
     store.select(`${list}/${to}`);
   };
   return (
     <div className="flex flex-wrap gap-10">
-      <Button size="small" aria-label={`Remove ${name}`} onClick={() => store.edit({ do: 'remove', at })}>
+      <Button
+        size="small"
+        aria-label={`Remove ${name}`}
+        reason={why}
+        onClick={() => store.edit(...removal(store.document, at))}
+      >
         Remove
       </Button>
       {index > 0 && (

@@ -13,6 +13,8 @@ import { linearOf } from './linear';
 import { changing } from './releases';
 import type { Sketch } from './sketch';
 
+const isOnBeam = (pointer: Pointer): boolean =>
+  /^\/beam\/(supports|hinges|segments|loads)\/\d+$/.test(pointer);
 const isSupport = (pointer: Pointer): boolean => /^\/beam\/supports\/\d+$/.test(pointer);
 const indexOf = (pointer: Pointer): number => Number(keysOf(pointer).at(-1));
 
@@ -25,14 +27,16 @@ export function whyKept(document: Written, pointer: Pointer): string | undefined
     : `Support ${letter} stays: results, rules or proof cases speak of its reaction. Change those first.`;
 }
 
-/** Takes a part away, with the parameters that only it spoke of and, of a support, its release. */
-export const removal = (document: Written, pointer: Pointer): Edit[] =>
-  changing(document, (steps) => {
+/** Takes a part away; of the beam, with the parameters that only it spoke of and, of a support, its release. */
+export function removal(document: Written, pointer: Pointer): Edit[] {
+  if (!isOnBeam(pointer)) return [{ do: 'remove', at: pointer }];
+  return changing(document, (steps) => {
     const spoken = wordsOf(valueAt(document, pointer));
     if (isSupport(pointer)) releaseNoMore(steps, indexOf(pointer));
     steps.do({ do: 'remove', at: pointer });
     dropIdle(steps, spoken);
   });
+}
 
 const wordsOf = (value: unknown): ReadonlySet<string> =>
   new Set(JSON.stringify(value ?? '').match(/[A-Za-z][A-Za-z0-9]*/g));
@@ -92,6 +96,12 @@ export function movedTo(
     if (isInOrder) reorder(steps, index, supports.filter(({ at }, k) => k !== index && at < x).length);
   });
 }
+
+/** Puts an entry elsewhere in its list. Supports take their letters along. */
+export const reordering = (document: Written, pointer: Pointer, to: number): Edit[] =>
+  isSupport(pointer)
+    ? changing(document, (steps) => reorder(steps, indexOf(pointer), to))
+    : [{ do: 'move', at: pointer, to }];
 
 function reorder(steps: DraftSteps, from: number, to: number): void {
   if (from === to) return;

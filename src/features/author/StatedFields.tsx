@@ -4,6 +4,7 @@ import type { Edit, Pointer } from './edit';
 import { listAt, textAt, valueAt } from './edit';
 import { useReadOnly } from './fields';
 import { StatedRows } from './StatedRows';
+import { SymbolLabel } from './SymbolLabel';
 import { useDraft, useFaultAt, useListAt, useTextAt } from './use-editor';
 
 /** Values of the parameters by symbol; one that is left empty is at its default. */
@@ -42,7 +43,7 @@ function StatedField({ at, parameter }: { readonly at: Pointer; readonly paramet
     return (
       <ChoiceField
         data-at={at}
-        label={symbol}
+        label={<SymbolLabel symbol={symbol} />}
         disabled={isReadOnly}
         error={fault}
         choices={[
@@ -61,7 +62,7 @@ function StatedField({ at, parameter }: { readonly at: Pointer; readonly paramet
   return (
     <Field
       data-at={at}
-      label={symbol}
+      label={<SymbolLabel symbol={symbol} />}
       readOnly={isReadOnly}
       error={reading && !reading.ok ? reading.message : fault}
       autoComplete="off"

@@ -1,6 +1,7 @@
 import { Button } from '@/components/ui/Button';
 import { listAt, type Pointer, textAt } from './edit';
 import { TextAt, useReadOnly } from './fields';
+import { SymbolLabel } from './SymbolLabel';
 import { useAt, useDraft, useListAt } from './use-editor';
 
 interface RowsProps {
@@ -26,7 +27,7 @@ export function RowFields({ at, columns }: RowsProps) {
             <div key={textAt(column, '/symbol')} className="w-120">
               <TextAt
                 at={`${at}/${index}/${textAt(column, '/symbol')}`}
-                label={textAt(column, '/symbol')}
+                label={<SymbolLabel symbol={textAt(column, '/symbol')} />}
                 maxLength={40}
               />
             </div>

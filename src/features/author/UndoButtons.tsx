@@ -8,12 +8,18 @@ export function UndoButtons() {
   if (useSnapshot(({ readOnly }) => readOnly)) return null;
   return (
     <div className="mt-12 flex flex-wrap gap-8">
-      <Button size="small" onClick={store.undo} keyName="Ctrl Z" aria-disabled={!canUndo || undefined}>
+      <Button size="small" onClick={store.undo} keyName="Ctrl Z" reasonId={canUndo ? undefined : 'no-undo'}>
         Undo
       </Button>
-      <Button size="small" onClick={store.redo} keyName="Ctrl ⇧ Z" aria-disabled={!canRedo || undefined}>
+      <Button size="small" onClick={store.redo} keyName="Ctrl ⇧ Z" reasonId={canRedo ? undefined : 'no-redo'}>
         Redo
       </Button>
+      <span id="no-undo" className="sr-only">
+        Nothing to take back.
+      </span>
+      <span id="no-redo" className="sr-only">
+        Nothing to do again.
+      </span>
     </div>
   );
 }

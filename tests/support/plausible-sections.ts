@@ -1,5 +1,6 @@
 import { toUnit } from '@/engine/quantity';
 import {
+  depthOf,
   dimensionFaults,
   type SectionDimensions,
   type SectionShape,
@@ -167,7 +168,7 @@ function printedRow({ designation, dimensions: d }: Made): PrintedRow {
   return {
     designation: designation(mass),
     shape: d.shape,
-    'h (mm)': size('h' in d ? d.h : d.d),
+    'h (mm)': size(depthOf(d)),
     'b (mm)': size('b' in d ? d.b : undefined),
     't_w (mm)': size('tw' in d ? d.tw : undefined),
     't_f (mm)': size('tf' in d ? d.tf : undefined),

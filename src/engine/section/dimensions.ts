@@ -1,10 +1,41 @@
-export const SECTION_SHAPES = ['i', 'channel', 'rhs', 'shs', 'chs', 'rectangle', 'round'] as const;
+export const SECTION_SHAPES = [
+  'i',
+  'tapered_i',
+  'channel',
+  'tapered_channel',
+  'tee',
+  'angle',
+  'rhs',
+  'shs',
+  'chs',
+  'rectangle',
+  'round',
+  'outline',
+  'values',
+] as const;
 export type SectionShape = (typeof SECTION_SHAPES)[number];
+/** Shapes that a row of sizes describes: an outline is drawn, and what is known by its values has none. */
+export type MeasuredShape = Exclude<SectionShape, 'outline' | 'values'>;
+export const MEASURED_SHAPES = SECTION_SHAPES.filter(
+  (shape): shape is MeasuredShape => shape !== 'outline' && shape !== 'values',
+);
 
+type Flanged = { h: number; b: number; tw: number; tf: number; r: number };
 /** Rolled I or H with parallel flanges: depth, width, web, flange, root radius. */
-export type IDimensions = { shape: 'i'; h: number; b: number; tw: number; tf: number; r: number };
-/** Channel with parallel flanges; a taper of the flanges is ignored: give the mean flange thickness. */
-export type ChannelDimensions = { shape: 'channel'; h: number; b: number; tw: number; tf: number; r: number };
+export type IDimensions = { shape: 'i' } & Flanged;
+/** Channel with parallel flanges. */
+export type ChannelDimensions = { shape: 'channel' } & Flanged;
+/** Tee: flange on top, h over all. */
+export type TeeDimensions = { shape: 'tee' } & Flanged;
+/**
+ * I or channel whose flanges' inner faces slope (0.14 is 14 %). tf is measured at `at` from the flange's tip; toe is the
+ * radius there.
+ */
+type Tapered = Flanged & { toe: number; slope: number; at: number };
+export type TaperedIDimensions = { shape: 'tapered_i' } & Tapered;
+export type TaperedChannelDimensions = { shape: 'tapered_channel' } & Tapered;
+/** Angle: leg h upright and leg b lying, of one thickness; root radius and radius of both toes. */
+export type AngleDimensions = { shape: 'angle'; h: number; b: number; t: number; r: number; toe: number };
 /** Rectangular or square tube: wall, outer and inner corner radius. */
 export type TubeDimensions = {
   shape: 'rhs' | 'shs';
@@ -18,23 +49,86 @@ type RoundTubeDimensions = { shape: 'chs'; d: number; t: number };
 /** Solid rectangle: sawn timber, glued laminated timber, bar. */
 type RectangleDimensions = { shape: 'rectangle'; h: number; b: number };
 type RoundBarDimensions = { shape: 'round'; d: number };
+/** A corner of an outline: z to the right, y up, m, rounded by r. */
+export type Corner = { z: number; y: number; r: number };
+/**
+ * Any outline: rings of corners, an outer one anticlockwise, a hole clockwise. Several outer rings act as one section, as
+ * far as their connection lets them. No formula of torsion covers every outline, so whoever drew it says J and I_w, and
+ * the thickness t of its thickest part.
+ */
+export type OutlineDimensions = {
+  shape: 'outline';
+  rings: readonly (readonly Corner[])[];
+  t: number;
+  j: number;
+  iw: number;
+};
+/** Known by its values alone: sizes over all, properties as supplied, and the area that V is divided by for τ. */
+export type ValuesDimensions = {
+  shape: 'values';
+  h: number;
+  b: number;
+  t: number;
+  area: number;
+  iMajor: number;
+  iMinor: number;
+  wElMajor: number;
+  wElMinor: number;
+  wPlMajor: number;
+  wPlMinor: number;
+  j: number;
+  iw: number;
+  shearArea: number;
+};
 
 /** What is measured of a section, in m. h is along the web (or upright), b across it. */
 export type SectionDimensions =
   | IDimensions
+  | TaperedIDimensions
   | ChannelDimensions
+  | TaperedChannelDimensions
+  | TeeDimensions
+  | AngleDimensions
   | TubeDimensions
   | RoundTubeDimensions
   | RectangleDimensions
-  | RoundBarDimensions;
+  | RoundBarDimensions
+  | OutlineDimensions
+  | ValuesDimensions;
 
-export const depthOf = (d: SectionDimensions): number => ('h' in d ? d.h : d.d);
-export const widthOf = (d: SectionDimensions): number => ('b' in d ? d.b : d.d);
+export const depthOf = (d: SectionDimensions): number =>
+  d.shape === 'outline' ? extent(d, 'y') : 'h' in d ? d.h : d.d;
+export const widthOf = (d: SectionDimensions): number =>
+  d.shape === 'outline' ? extent(d, 'z') : 'b' in d ? d.b : d.d;
+
+function extent({ rings }: OutlineDimensions, along: 'y' | 'z'): number {
+  const places = rings.flatMap((ring) => ring.map((corner) => corner[along]));
+  return Math.max(...places) - Math.min(...places);
+}
 
 /** The thickness that decides the strength: the thicker of flange and web, since either may govern. */
 export function governingThickness(d: SectionDimensions): number {
   if ('tf' in d) return Math.max(d.tf, d.tw);
-  return 't' in d ? d.t : Math.min(depthOf(d), 'b' in d ? d.b : depthOf(d));
+  return 't' in d ? d.t : Math.min(depthOf(d), widthOf(d));
+}
+
+/**
+ * How flanges taper, and their toe radius, where a table gives h, b, t_w, t_f and r alone. European I (DIN 1025-1): 14 %,
+ * t_f at a quarter of the width, toe 0.6 t_w. European channels (DIN 1026-1): 8 % and t_f at half the width up to h =
+ * 300 mm, above it 5 % and in the middle of the outstand, toe half the root. American S and C (ASTM A6): 1 in 6, t_f in the
+ * middle of the outstand, toe half the root. From memory.
+ */
+export function taper(
+  shape: 'tapered_i' | 'tapered_channel',
+  d: Flanged,
+  origin: 'european' | 'american',
+): TaperedIDimensions | TaperedChannelDimensions {
+  const middle = (shape === 'tapered_i' ? (d.b - d.tw) / 2 : d.b - d.tw) / 2;
+  if (origin === 'american') return { shape, ...d, toe: d.r / 2, slope: 1 / 6, at: middle };
+  if (shape === 'tapered_i') return { shape, ...d, toe: 0.6 * d.tw, slope: 0.14, at: d.b / 4 };
+  return d.h > 0.3
+    ? { shape, ...d, toe: d.r / 2, slope: 0.05, at: middle }
+    : { shape, ...d, toe: d.r / 2, slope: 0.08, at: d.b / 2 };
 }
 
 /** EN 10210 hot finished, EN 10219 cold formed, ASTM A500 cold formed. */
@@ -68,76 +162,4 @@ export function cornerRadii(t: number, standard: TubeStandard): { ro: number; ri
 export function tube(h: number, b: number, nominalWall: number, standard: TubeStandard): TubeDimensions {
   const t = designWall(nominalWall, standard);
   return { shape: h === b ? 'shs' : 'rhs', h, b, t, ...cornerRadii(t, standard) };
-}
-
-export type DimensionFault = { dimension: string; message: string };
-
-const positive = (entries: readonly (readonly [string, number])[]): DimensionFault[] =>
-  entries
-    .filter(([, value]) => !(value > 0 && Number.isFinite(value))) // !(>) also catches NaN
-    .map(([dimension]) => ({ dimension, message: `${dimension} must be more than 0` }));
-
-function flangedFaults(d: IDimensions | ChannelDimensions): DimensionFault[] {
-  const faults = positive([
-    ['h', d.h],
-    ['b', d.b],
-    ['tw', d.tw],
-    ['tf', d.tf],
-  ]);
-  if (!(d.r >= 0)) faults.push({ dimension: 'r', message: 'r must not be negative' });
-  if (faults.length > 0) return faults;
-  if (2 * (d.tf + d.r) >= d.h)
-    faults.push({ dimension: 'h', message: 'flanges and root radii fill the depth' });
-  const roots = d.shape === 'i' ? 2 : 1;
-  if (d.tw + roots * d.r > d.b) {
-    faults.push({ dimension: 'b', message: 'web and root radii are wider than the flange' });
-  }
-  return faults;
-}
-
-function tubeFaults(d: TubeDimensions): DimensionFault[] {
-  const faults = positive([
-    ['h', d.h],
-    ['b', d.b],
-    ['t', d.t],
-  ]);
-  const least = Math.min(d.h, d.b);
-  if (2 * d.t >= least) faults.push({ dimension: 't', message: 'the walls fill the tube' });
-  if (!(d.ro >= 0 && d.ri >= 0 && 2 * d.ro <= least && 2 * (d.ri + d.t) <= least)) {
-    faults.push({ dimension: 'ro', message: 'the corner radii do not fit into the tube' });
-  }
-  return faults;
-}
-
-/** Why a section with these dimensions cannot exist; empty where it can. */
-export function dimensionFaults(d: SectionDimensions): DimensionFault[] {
-  switch (d.shape) {
-    case 'i':
-    case 'channel':
-      return flangedFaults(d);
-    case 'rhs':
-    case 'shs':
-      return tubeFaults(d);
-    case 'chs': {
-      const faults = positive([
-        ['d', d.d],
-        ['t', d.t],
-      ]);
-      return 2 * d.t > d.d ? [...faults, { dimension: 't', message: 'the walls fill the tube' }] : faults;
-    }
-    case 'rectangle':
-      return positive([
-        ['h', d.h],
-        ['b', d.b],
-      ]);
-    case 'round':
-      return positive([['d', d.d]]);
-  }
-}
-
-export class ImpossibleSection extends Error {
-  constructor(readonly faults: readonly DimensionFault[]) {
-    super(faults.map((fault) => fault.message).join('; '));
-    this.name = 'ImpossibleSection';
-  }
 }

@@ -1,3 +1,4 @@
+export { compound, type Placed, sideBySide, solidOutline } from './compound';
 export {
   asciiDesignation,
   type DesignationParts,
@@ -6,25 +7,29 @@ export {
   designationRank,
   keyOfParts,
 } from './designation';
+export { dimensionFaults, ImpossibleSection } from './dimension-faults';
 export {
+  type Corner,
   cornerRadii,
   depthOf,
   designWall,
-  dimensionFaults,
   governingThickness,
   type IDimensions,
-  ImpossibleSection,
+  MEASURED_SHAPES,
+  type MeasuredShape,
+  type OutlineDimensions,
   SECTION_SHAPES,
   type SectionDimensions,
   type SectionShape,
   TUBE_STANDARDS,
+  taper,
   tube,
   widthOf,
 } from './dimensions';
 export { elasticStrength, MATERIALS, materialFor, materialIn, yieldStrength } from './material';
 export { type MaterialEntry, type MaterialSet, materialsOf } from './material-set';
 export type { Material } from './material-types';
-export { outlineCorners, outlinePath, roundCorners } from './outline';
+export { outlineCorners, outlinePath } from './outline';
 export {
   type Finding,
   plausibilityFindings,
@@ -34,3 +39,4 @@ export {
   type TabulatedName,
 } from './plausibility';
 export { type SectionProperties, sectionProperties } from './properties';
+export { roundCorners } from './rings';

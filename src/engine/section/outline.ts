@@ -1,7 +1,5 @@
-import { depthOf, type SectionDimensions, widthOf } from './dimensions';
-
-/** A corner of the outline: to the right of the left edge and up from the bottom, m, rounded by `r`. */
-export type Corner = { z: number; y: number; r: number };
+import { type Corner, depthOf, type SectionDimensions, type TeeDimensions, widthOf } from './dimensions';
+import { roundCorners } from './rings';
 
 const box = (z0: number, y0: number, z1: number, y1: number, r: number): Corner[] => [
   { z: z0, y: y0, r },
@@ -11,78 +9,105 @@ const box = (z0: number, y0: number, z1: number, y1: number, r: number): Corner[
 ];
 
 /**
- * The rings of a section, the outer one anticlockwise and first, a hole clockwise after it. Every corner is a right
- * angle; a circle is a square with corners of its radius.
+ * The rings of a section, from its left edge and its bottom, m: an outer one anticlockwise and first, a hole clockwise
+ * after it. A circle is a square with corners of its radius; a section known by its values is the box of its sizes.
  */
-export function outlineCorners(d: SectionDimensions): Corner[][] {
+export function outlineCorners(d: SectionDimensions): readonly (readonly Corner[])[] {
   switch (d.shape) {
     case 'i':
+      return [flangedCorners({ ...PARALLEL, ...d }, (d.b - d.tw) / 2)];
+    case 'tapered_i':
       return [flangedCorners(d, (d.b - d.tw) / 2)];
     case 'channel':
+      return [flangedCorners({ ...PARALLEL, ...d }, 0)];
+    case 'tapered_channel':
       return [flangedCorners(d, 0)];
+    case 'tee':
+      return [teeCorners(d)];
+    case 'angle':
+      return [
+        [
+          { z: 0, y: 0, r: 0 },
+          { z: d.b, y: 0, r: 0 },
+          { z: d.b, y: d.t, r: d.toe },
+          { z: d.t, y: d.t, r: d.r },
+          { z: d.t, y: d.h, r: d.toe },
+          { z: 0, y: d.h, r: 0 },
+        ],
+      ];
     case 'rhs':
     case 'shs':
       return [box(0, 0, d.b, d.h, d.ro), box(d.t, d.t, d.b - d.t, d.h - d.t, d.ri).reverse()];
     case 'chs':
       return [box(0, 0, d.d, d.d, d.d / 2), box(d.t, d.t, d.d - d.t, d.d - d.t, d.d / 2 - d.t).reverse()];
     case 'rectangle':
+    case 'values':
       return [box(0, 0, d.b, d.h, 0)];
     case 'round':
       return [box(0, 0, d.d, d.d, d.d / 2)];
+    case 'outline':
+      return placed(d.rings);
   }
 }
 
-function flangedCorners(
-  d: { h: number; b: number; tw: number; tf: number; r: number },
-  back: number,
-): Corner[] {
-  const { h, b, tf, r } = d;
+/** Moved so that the left edge and the bottom are at 0, wherever they were drawn. */
+function placed(rings: readonly (readonly Corner[])[]): Corner[][] {
+  const corners = rings.flat();
+  const left = Math.min(...corners.map(({ z }) => z));
+  const bottom = Math.min(...corners.map(({ y }) => y));
+  return rings.map((ring) => ring.map(({ z, y, r }) => ({ z: z - left, y: y - bottom, r })));
+}
+
+const PARALLEL = { slope: 0, at: 0, toe: 0 };
+
+type Flanges = {
+  h: number;
+  b: number;
+  tw: number;
+  tf: number;
+  r: number;
+  slope: number;
+  at: number;
+  toe: number;
+};
+
+function flangedCorners(d: Flanges, back: number): Corner[] {
+  const { h, b, r, toe } = d;
   const face = back + d.tw;
+  const tip = d.tf - d.slope * d.at;
+  const root = tip + d.slope * (b - face);
   const right: Corner[] = [
     { z: 0, y: 0, r: 0 },
     { z: b, y: 0, r: 0 },
-    { z: b, y: tf, r: 0 },
-    { z: face, y: tf, r },
-    { z: face, y: h - tf, r },
-    { z: b, y: h - tf, r: 0 },
+    { z: b, y: tip, r: toe },
+    { z: face, y: root, r },
+    { z: face, y: h - root, r },
+    { z: b, y: h - tip, r: toe },
     { z: b, y: h, r: 0 },
     { z: 0, y: h, r: 0 },
   ];
   if (back === 0) return right;
   return [
     ...right,
-    { z: 0, y: h - tf, r: 0 },
-    { z: back, y: h - tf, r },
-    { z: back, y: tf, r },
-    { z: 0, y: tf, r: 0 },
+    { z: 0, y: h - tip, r: toe },
+    { z: back, y: h - root, r },
+    { z: back, y: root, r },
+    { z: 0, y: tip, r: toe },
   ];
 }
 
-/** Where the rounding of a corner starts and ends, and whether it turns anticlockwise. */
-export type Rounding = {
-  start: { z: number; y: number };
-  end: { z: number; y: number };
-  r: number;
-  left: boolean;
-};
-
-const towards = (from: Corner, to: Corner, r: number) => {
-  const length = Math.hypot(to.z - from.z, to.y - from.y) || 1;
-  return { z: from.z + (r * (to.z - from.z)) / length, y: from.y + (r * (to.y - from.y)) / length };
-};
-
-export function roundCorners(ring: readonly Corner[]): Rounding[] {
-  return ring.map((corner, index) => {
-    const before = ring[(index + ring.length - 1) % ring.length] ?? corner;
-    const after = ring[(index + 1) % ring.length] ?? corner;
-    const turn = (corner.z - before.z) * (after.y - corner.y) - (corner.y - before.y) * (after.z - corner.z);
-    return {
-      start: towards(corner, before, corner.r),
-      end: towards(corner, after, corner.r),
-      r: corner.r,
-      left: turn > 0,
-    };
-  });
+function teeCorners({ h, b, tw, tf, r }: TeeDimensions): Corner[] {
+  const [left, right] = [(b - tw) / 2, (b + tw) / 2];
+  return [
+    { z: left, y: 0, r: 0 },
+    { z: right, y: 0, r: 0 },
+    { z: right, y: h - tf, r },
+    { z: b, y: h - tf, r: 0 },
+    { z: b, y: h, r: 0 },
+    { z: 0, y: h, r: 0 },
+    { z: 0, y: h - tf, r: 0 },
+    { z: left, y: h - tf, r },
+  ];
 }
 
 const MM = 1000;

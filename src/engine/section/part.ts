@@ -8,6 +8,8 @@ export type Part = {
   z: number;
   ownMajor: number;
   ownMinor: number;
+  /** ∫yz dA about its own centroid: 0 where an axis of symmetry is upright. */
+  ownProduct: number;
   plasticMajor: number;
   plasticMinor: number;
 };
@@ -19,6 +21,7 @@ export function rectangle(b: number, h: number, y = 0, z = 0, sign: 1 | -1 = 1):
     z,
     ownMajor: (sign * b * h ** 3) / 12,
     ownMinor: (sign * h * b ** 3) / 12,
+    ownProduct: 0,
     plasticMajor: (sign * b * h ** 2) / 4,
     plasticMinor: (sign * h * b ** 2) / 4,
   };
@@ -28,6 +31,7 @@ export function rectangle(b: number, h: number, y = 0, z = 0, sign: 1 | -1 = 1):
 const FILLET_AREA = 1 - Math.PI / 4;
 const FILLET_CENTROID = (10 - 3 * Math.PI) / (12 - 3 * Math.PI); // from the corner
 const FILLET_OWN = 1 / 3 - Math.PI / 16 - 1 / (3 * (12 - 3 * Math.PI));
+const FILLET_PRODUCT = 19 / 24 - Math.PI / 4 - FILLET_AREA * FILLET_CENTROID ** 2; // about the corner it is 19/24 − π/4
 
 /** The fillet of radius r in the corner (y, z), lying towards `up` and `right`; it never straddles an axis. */
 export function fillet(
@@ -44,6 +48,7 @@ export function fillet(
     z: corner.z + right * FILLET_CENTROID * r,
     ownMajor: own,
     ownMinor: own,
+    ownProduct: sign * up * right * FILLET_PRODUCT * r ** 4,
     plasticMajor: 0,
     plasticMinor: 0,
   };

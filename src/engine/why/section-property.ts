@@ -1,10 +1,14 @@
-import { type SectionDimensions, sectionProperties } from '../section/index';
+import { type MeasuredShape, type SectionDimensions, sectionProperties } from '../section/index';
 import type { SectionProperty } from './types';
 
-/** What the dimensions of a shape are called, in the order in which they are given. */
-export const DIMENSIONS_OF: Readonly<Record<SectionDimensions['shape'], readonly string[]>> = {
+/** What the dimensions of a shape are called, in the order in which they are given; an outline and values are given whole. */
+export const DIMENSIONS_OF: Readonly<Record<MeasuredShape, readonly string[]>> = {
   i: ['h', 'b', 'tw', 'tf', 'r'],
+  tapered_i: ['h', 'b', 'tw', 'tf', 'r', 'toe', 'slope', 'at'],
   channel: ['h', 'b', 'tw', 'tf', 'r'],
+  tapered_channel: ['h', 'b', 'tw', 'tf', 'r', 'toe', 'slope', 'at'],
+  tee: ['h', 'b', 'tw', 'tf', 'r'],
+  angle: ['h', 'b', 't', 'r', 'toe'],
   rhs: ['h', 'b', 't', 'ro', 'ri'],
   shs: ['h', 'b', 't', 'ro', 'ri'],
   chs: ['d', 't'],

@@ -21,6 +21,9 @@ const LENGTHS: Readonly<Record<string, { label: string; symbol: string }>> = {
   tw: { label: 'Web', symbol: 't_w' },
   tf: { label: 'Flange', symbol: 't_f' },
   r: { label: 'Root radius', symbol: 'r' },
+  toe: { label: 'Toe radius', symbol: 'r_2' },
+  slope: { label: 'Slope of the flanges', symbol: 's' },
+  at: { label: 'Where the flange is measured, from its tip', symbol: 'u' },
   ro: { label: 'Outer corner radius', symbol: 'r_o' },
   ri: { label: 'Inner corner radius', symbol: 'r_i' },
 };
@@ -164,6 +167,21 @@ export class SectionTraces {
     const { dimensions } = this.section;
     const value = sectionProperties(dimensions)[property];
     const { shape } = dimensions;
+    if (shape === 'outline' || shape === 'values') {
+      const { designation, table, tableName, edition } = this.section;
+      return leaf(
+        { label, symbol, value, measure },
+        {
+          kind: 'row',
+          column: shape,
+          isComputed: shape === 'outline',
+          designation,
+          table,
+          tableName,
+          edition,
+        },
+      );
+    }
     return node({ label, symbol, value, measure }, { kind: 'section', shape, property }, () =>
       DIMENSIONS_OF[shape].map((name) => ({ name, trace: this.length(name) })),
     );
@@ -174,7 +192,12 @@ export class SectionTraces {
     const place = { designation, table, tableName, edition };
     const { label, symbol } = LENGTHS[name]!;
     return leaf(
-      { label, symbol, value: Number(Object(dimensions)[name]), measure: 'section_size' },
+      {
+        label,
+        symbol,
+        value: Number(Object(dimensions)[name]),
+        measure: name === 'slope' ? 'ratio' : 'section_size',
+      },
       { kind: 'row', column: name, isComputed: false, ...place },
     );
   }

@@ -2,7 +2,7 @@ import type { CheckRow, Criteria, DeflectionLimit } from '../check/index';
 import type { Combination } from '../combination/index';
 import type { Beam } from '../model/index';
 import type { Purpose, UnitSystemName } from '../quantity/index';
-import type { Material, SectionDimensions } from '../section/index';
+import type { Material, MeasuredShape, SectionDimensions } from '../section/index';
 import type { Instance, Template, Tree, Values } from '../template/index';
 
 /** A movement of the released beam for a unit value of a redundant: m/N, m/(N·m), rad/N, rad/(N·m). */
@@ -94,7 +94,7 @@ export type Root = { readonly kind: 'root'; readonly from: Tree; readonly polyno
 /** A property of a shape, computed from its dimensions, which are the parts. */
 export type SectionProperty = {
   readonly kind: 'section';
-  readonly shape: SectionDimensions['shape'];
+  readonly shape: MeasuredShape;
   readonly property: 'area' | 'iMajor' | 'firstMoment' | 'webThickness';
 };
 

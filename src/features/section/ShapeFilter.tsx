@@ -8,12 +8,13 @@ const SHAPES = [
   { shape: 'channel', word: 'channel', path: 'M6 2h16v4H11v20h11v4H6z' },
   { shape: 'hollow', word: 'hollow', path: 'M5 2h18v28H5zM8.5 5.500v21h11v-21z' },
   { shape: 'timber', word: 'timber', path: 'M6 2h16v28H6zM6 9h16M6 16h16M6 23h16' },
+  { shape: 'other', word: 'other', path: 'M6 2h4v24h14v4H6z' },
 ] as const;
 
 /** Shapes as they are drawn; a second press takes the choice back. */
 export function ShapeFilter({ value, onChange }: ShapeFilterProps) {
   return (
-    <fieldset className="mt-10 grid grid-cols-4">
+    <fieldset className="mt-10 grid grid-cols-5">
       <legend className="sr-only">Shape</legend>
       {SHAPES.map(({ shape, word, path }) => {
         const chosen = value === shape;

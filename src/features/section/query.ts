@@ -56,9 +56,14 @@ const MEASURES = Object.keys(SECTION_MEASURES) as SectionMeasure[];
 /** Shapes as people name them, in groups where they do. */
 const SHAPE_NAMES: Readonly<Record<string, readonly SectionShape[]>> = {
   ...Object.fromEntries(SECTION_SHAPES.map((shape) => [shape, [shape]])),
+  i: ['i', 'tapered_i'],
   h: ['i'],
-  u: ['channel'],
-  c: ['channel'],
+  channel: ['channel', 'tapered_channel'],
+  u: ['channel', 'tapered_channel'],
+  c: ['channel', 'tapered_channel'],
+  t: ['tee'],
+  l: ['angle'],
+  other: ['tee', 'angle', 'outline', 'values'],
   hollow: ['rhs', 'shs', 'chs'],
   timber: ['rectangle'],
 };

@@ -10,7 +10,7 @@ import {
   type SectionPlace,
   type SectionQuery,
 } from './query';
-import { dimensionsMm, type SectionItem } from './section';
+import { itemDimensions, type SectionItem } from './section';
 
 const size = (symbol: string, ofTube?: string): SQL =>
   ofTube === undefined
@@ -108,7 +108,7 @@ type Row = Omit<SectionItem, 'dimensions_mm'> & {
 
 export function toItem(row: Row): SectionItem {
   const { id: _id, dimensions, ...shown } = row;
-  return { ...shown, dimensions_mm: dimensionsMm(dimensions) };
+  return { ...shown, ...itemDimensions(dimensions) };
 }
 
 export interface Found {

@@ -1,19 +1,50 @@
 import { z } from 'zod';
-import { SECTION_SHAPES, type SectionDimensions, TUBE_STANDARDS } from '@/engine/section';
+import { depthOf, SECTION_SHAPES, type SectionDimensions, TUBE_STANDARDS, widthOf } from '@/engine/section';
 import type { SectionValues } from './resolve';
 
 const length = z.number().positive();
 const radius = z.number().nonnegative();
 const flanged = { h: length, b: length, tw: length, tf: length, r: radius };
+const tapered = { ...flanged, toe: radius, slope: z.number().positive(), at: radius };
+const MAX_CORNERS = 200; // of one ring, and of rings: more is a drawing, not a section
+const MAX_RINGS = 24;
+const ring = z.array(z.strictObject({ z: z.number(), y: z.number(), r: radius })).max(MAX_CORNERS);
 
 /** Dimensions in m, as the engine takes them. */
-const sectionDimensionsSchema = z.discriminatedUnion('shape', [
+export const sectionDimensionsSchema = z.discriminatedUnion('shape', [
   z.strictObject({ shape: z.literal('i'), ...flanged }),
   z.strictObject({ shape: z.literal('channel'), ...flanged }),
+  z.strictObject({ shape: z.literal('tee'), ...flanged }),
+  z.strictObject({ shape: z.literal('tapered_i'), ...tapered }),
+  z.strictObject({ shape: z.literal('tapered_channel'), ...tapered }),
+  z.strictObject({ shape: z.literal('angle'), h: length, b: length, t: length, r: radius, toe: radius }),
   z.strictObject({ shape: z.enum(['rhs', 'shs']), h: length, b: length, t: length, ro: radius, ri: radius }),
   z.strictObject({ shape: z.literal('chs'), d: length, t: length }),
   z.strictObject({ shape: z.literal('rectangle'), h: length, b: length }),
   z.strictObject({ shape: z.literal('round'), d: length }),
+  z.strictObject({
+    shape: z.literal('outline'),
+    rings: z.array(ring.readonly()).min(1).max(MAX_RINGS).readonly(),
+    t: length,
+    j: radius,
+    iw: radius,
+  }),
+  z.strictObject({
+    shape: z.literal('values'),
+    h: length,
+    b: length,
+    t: length,
+    area: length,
+    iMajor: length,
+    iMinor: length,
+    wElMajor: length,
+    wElMinor: length,
+    wPlMajor: length,
+    wPlMinor: length,
+    j: radius,
+    iw: radius,
+    shearArea: length,
+  }),
 ]) satisfies z.ZodType<SectionDimensions>;
 
 const positive = z.number().positive();
@@ -65,28 +96,51 @@ export const sectionItemSchema = sectionRowSchema
     w_pl_cm3: positive.nullable(),
     j_cm4: positive.nullable(),
     iw_cm6: z.number().nonnegative().nullable(),
+    /** Lengths by their symbol; of an outline and of values alone the sizes over all. */
     dimensions_mm: z.record(z.string(), z.number()),
+    /** Where lengths by symbol do not describe it: in m, m², m³, m⁴ and m⁶. */
+    dimensions_si: sectionDimensionsSchema.optional(),
   });
 export type SectionItem = z.infer<typeof sectionItemSchema>;
 
 const FIGURES = 12; // a length in mm again, without the last bits of its metres
 
-/** Dimensions in mm by their symbol: {h: 300, b: 150, tw: 7.1, tf: 10.7, r: 15}. */
-export function dimensionsMm(dimensions: SectionDimensions): Record<string, number> {
-  return Object.fromEntries(
-    Object.entries(dimensions)
-      .filter((entry): entry is [string, number] => typeof entry[1] === 'number')
-      .map(([symbol, metres]) => [symbol, Number((metres * 1000).toPrecision(FIGURES))]),
-  );
+const toMm = (metres: number): number => Number((metres * 1000).toPrecision(FIGURES));
+
+/** An item's dimensions: in mm by their symbol, {h: 300, b: 150, tw: 7.1, tf: 10.7, r: 15}, and as they are where that is not all. */
+export function itemDimensions(d: SectionDimensions): Pick<SectionItem, 'dimensions_mm' | 'dimensions_si'> {
+  switch (d.shape) {
+    case 'outline':
+    case 'values':
+      return {
+        dimensions_mm: { h: toMm(depthOf(d)), b: toMm(widthOf(d)), t: toMm(d.t) },
+        dimensions_si: d,
+      };
+    case 'tapered_i':
+    case 'tapered_channel': {
+      const { slope: _slope, ...lengths } = d;
+      return { dimensions_mm: lengthsMm(lengths), dimensions_si: d };
+    }
+    default:
+      return { dimensions_mm: lengthsMm(d) };
+  }
 }
+
+const lengthsMm = (lengths: Readonly<Record<string, string | number>>): Record<string, number> =>
+  Object.fromEntries(
+    Object.entries(lengths).flatMap(([symbol, value]) =>
+      typeof value === 'number' ? [[symbol, toMm(value)]] : [],
+    ),
+  );
 
 export function toSectionItem(row: SectionRow, table: string, edition: number): SectionItem {
   const { key: _key, dimensions, w_el_minor_cm3: _el, w_pl_minor_cm3: _pl, ...shown } = row;
-  return { table, edition, ...shown, dimensions_mm: dimensionsMm(dimensions) };
+  return { table, edition, ...shown, ...itemDimensions(dimensions) };
 }
 
 /** An item's dimensions in m again, as the engine takes them. */
-export const dimensionsOf = ({ shape, dimensions_mm }: SectionItem): SectionDimensions =>
+export const dimensionsOf = ({ shape, dimensions_mm, dimensions_si }: SectionItem): SectionDimensions =>
+  dimensions_si ??
   sectionDimensionsSchema.parse({
     shape,
     ...Object.fromEntries(Object.entries(dimensions_mm).map(([symbol, mm]) => [symbol, mm / 1000])),

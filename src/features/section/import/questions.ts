@@ -1,5 +1,5 @@
 import { unitText } from '@/engine/quantity';
-import { SECTION_SHAPES } from '@/engine/section';
+import { MEASURED_SHAPES } from '@/engine/section';
 import { cellText } from './cells';
 import type { Axes, DecimalMark, Encoding, Mapping, Question } from './contract';
 import { samplesOf } from './encoding';
@@ -77,7 +77,7 @@ export function questionsOf(mapping: Mapping, known: Known): Question[] {
         })),
     shape: () => {
       const message = 'Neither headings nor names tell the shape. Say which it is.';
-      return [{ kind: 'shape', message, choices: SECTION_SHAPES.map((value) => ({ value })) }];
+      return [{ kind: 'shape', message, choices: MEASURED_SHAPES.map((value) => ({ value })) }];
     },
   };
   return openQuestions(mapping).flatMap((kind) => asked[kind]());

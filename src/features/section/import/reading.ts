@@ -3,9 +3,10 @@ import {
   type DesignationParts,
   designationParts,
   designWall,
-  SECTION_SHAPES,
+  MEASURED_SHAPES,
   type SectionDimensions,
   type SectionShape,
+  taper,
 } from '@/engine/section';
 import { type CellFault, cellText, hasControl, hasLookAlike, isFormula, isMissing, readCell } from './cells';
 import type { Cause, Finding, Mapping, NumberField, RuleNumber } from './contract';
@@ -30,12 +31,18 @@ export type RowRead = {
 
 export const SIZES: Readonly<Record<SectionShape, readonly NumberField[]>> = {
   i: ['h', 'b', 'tw', 'tf'],
+  tapered_i: ['h', 'b', 'tw', 'tf'],
   channel: ['h', 'b', 'tw', 'tf'],
+  tapered_channel: ['h', 'b', 'tw', 'tf'],
+  tee: ['h', 'b', 'tw', 'tf'],
+  angle: ['h', 'b', 't'],
   rhs: ['h', 'b', 't'],
   shs: ['h', 't'],
   chs: ['h', 't'],
   rectangle: ['h', 'b'],
   round: ['h'],
+  outline: [],
+  values: [],
 };
 
 /** Values that no row may leave out where the file has a column for them. */
@@ -100,7 +107,7 @@ function readDesignation(line: FileLine, plan: Plan, findings: Finding[]): strin
   return printed;
 }
 
-const SHAPES: ReadonlySet<string> = new Set(SECTION_SHAPES);
+const SHAPES: ReadonlySet<string> = new Set(MEASURED_SHAPES);
 const isShape = (text: string): text is SectionShape => SHAPES.has(text);
 /** Families as suppliers name them. */
 const SHAPE_WORDS: Readonly<Record<string, SectionShape>> = {
@@ -121,7 +128,7 @@ function readShape(line: FileLine, plan: Plan, printed: string, findings: Findin
   const known = SHAPE_WORDS[read] ?? (read === '' ? plan.mapping.shape : null);
   if (known !== null) return known;
   const column = { index: plan.shape, heading: plan.headings[plan.shape] ?? 'shape' };
-  const message = `"${read.slice(0, 40)}" is no shape. Give one of ${SECTION_SHAPES.join(', ')}.`;
+  const message = `"${read.slice(0, 40)}" is no shape. Give one of ${MEASURED_SHAPES.join(', ')}.`;
   const place = { line: line.number, printed, column, read };
   findings.push(cellFinding(place, { rule: 25, severity: 'error', cause: 'shape_unknown', message }));
   return null;
@@ -259,7 +266,13 @@ export function dimensionsOf(shape: SectionShape, values: Values, mapping: Mappi
   switch (shape) {
     case 'i':
     case 'channel':
+    case 'tee':
       return { shape, h, b, tw, tf, r };
+    case 'tapered_i':
+    case 'tapered_channel':
+      return taper(shape, { h, b, tw, tf, r }, mapping.axes === 'us' ? 'american' : 'european');
+    case 'angle':
+      return { shape, h, b, t, r, toe: r / 2 };
     case 'rhs':
     case 'shs':
       return { shape, h, b, t: wall, ...cornerRadii(wall, standard) };
@@ -269,5 +282,8 @@ export function dimensionsOf(shape: SectionShape, values: Values, mapping: Mappi
       return { shape, h, b };
     case 'round':
       return { shape, d: h };
+    case 'outline':
+    case 'values':
+      throw new RangeError('such a section is drawn or given by its values, not read from a table of sizes');
   }
 }

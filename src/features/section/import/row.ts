@@ -7,13 +7,14 @@ import {
   designWall,
   dimensionFaults,
   type Finding,
+  type MeasuredShape,
   plausibilityFindings,
   type SectionDimensions,
-  type SectionShape,
   sectionProperties,
   TABULATED,
   type Tabulated,
   type TabulatedName,
+  taper,
   widthOf,
 } from '@/engine/section';
 import type { SectionRow, SectionTableMeta } from '../section';
@@ -66,13 +67,19 @@ export function readRow(cells: readonly string[], number: number, context: RowCo
   return { row, faults: line.faults };
 }
 
-function dimensionsOf(shape: SectionShape, values: Values, meta: SectionTableMeta): SectionDimensions {
+function dimensionsOf(shape: MeasuredShape, values: Values, meta: SectionTableMeta): SectionDimensions {
   const { h = Number.NaN, b = h, tw = Number.NaN, tf = Number.NaN, r = 0, t = Number.NaN } = values;
   const wall = designWall(t, meta.tube_standard);
   switch (shape) {
     case 'i':
     case 'channel':
+    case 'tee':
       return { shape, h, b, tw, tf, r };
+    case 'tapered_i':
+    case 'tapered_channel':
+      return taper(shape, { h, b, tw, tf, r }, meta.axes === 'us' ? 'american' : 'european');
+    case 'angle':
+      return { shape, h, b, t, r, toe: r / 2 };
     case 'rhs':
     case 'shs':
       return { shape, h, b, t: wall, ...cornerRadii(wall, meta.tube_standard) };

@@ -1,4 +1,4 @@
-import { SECTION_SHAPES, type SectionShape } from '@/engine/section';
+import { MEASURED_SHAPES, type MeasuredShape } from '@/engine/section';
 import type { SectionTableMeta } from '../section';
 import type { Column } from './columns';
 import type { ImportFault } from './fault';
@@ -34,9 +34,14 @@ export function lineOf(cells: readonly string[], number: number, columns: readon
   };
 }
 
-const SIZES: Readonly<Record<SectionShape, readonly NumberField[]>> = {
-  i: ['h', 'b', 'tw', 'tf'],
-  channel: ['h', 'b', 'tw', 'tf'],
+const FLANGED: readonly NumberField[] = ['h', 'b', 'tw', 'tf'];
+const SIZES: Readonly<Record<MeasuredShape, readonly NumberField[]>> = {
+  i: FLANGED,
+  tapered_i: FLANGED,
+  channel: FLANGED,
+  tapered_channel: FLANGED,
+  tee: FLANGED,
+  angle: ['h', 'b', 't'],
   rhs: ['h', 'b', 't'],
   shs: ['h', 'b', 't'],
   chs: ['h', 't'],
@@ -72,21 +77,21 @@ export function readDesignation(line: Line): string {
   return printed;
 }
 
-export function readShape(line: Line, meta: SectionTableMeta): SectionShape | null {
+export function readShape(line: Line, meta: SectionTableMeta): MeasuredShape | null {
   const text = line.text('shape').toLowerCase() || meta.shape;
-  const shape = SECTION_SHAPES.find((one) => one === text) ?? null;
+  const shape = MEASURED_SHAPES.find((one) => one === text) ?? null;
   if (shape === null) {
     line.report('shape', {
       code: 'not_allowed',
       severity: 'error',
-      message: `Give the shape as one of ${SECTION_SHAPES.join(', ')}.`,
+      message: `Give the shape as one of ${MEASURED_SHAPES.join(', ')}.`,
     });
   }
   return shape;
 }
 
 /** Every number of the row. A missing one is a fault where the shape or the file's own columns ask for it. */
-export function readNumbers(line: Line, shape: SectionShape, { columns, mark }: RowContext): Values {
+export function readNumbers(line: Line, shape: MeasuredShape, { columns, mark }: RowContext): Values {
   const values: Partial<Record<NumberField, number>> = {};
   const needed = new Set([
     ...SIZES[shape],

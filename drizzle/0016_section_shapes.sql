@@ -1,0 +1,2 @@
+ALTER TABLE "section" DROP CONSTRAINT "section_shape";--> statement-breakpoint
+ALTER TABLE "section" ADD CONSTRAINT "section_shape" CHECK ("section"."shape" in ('i', 'tapered_i', 'channel', 'tapered_channel', 'tee', 'angle', 'rhs', 'shs', 'chs', 'rectangle', 'round', 'outline', 'values'));

@@ -15,6 +15,8 @@ const OFF = 0.05; // of the median, by which a column is out without a unit that
 const ROUGH: ReadonlySet<TabulatedName> = new Set(['j', 'iw']); // computed within 5 and 12 % only
 const ROUGHLY_OFF = 0.2;
 
+const NOMINAL_MASS = 1.07; // over that of the design wall of a tube to ASTM A500
+
 const TABULATED_NAMES = Object.keys(TABULATED) as TabulatedName[];
 
 const median = (sorted: Float64Array) => sorted[Math.floor(sorted.length / 2)] ?? Number.NaN;
@@ -32,7 +34,9 @@ function ratiosOf(store: RowStore, mapping: Mapping, density: number): Map<Tabul
     const computed = sectionProperties(dimensions);
     for (const name of names) {
       const value = store.value(name, at);
-      const expected = name === 'mass' ? density * computed.area : computed[name];
+      const isDesignWall = mapping.tubeStandard === 'ASTM A500' && 't' in dimensions;
+      const ofMass = density * computed.area * (isDesignWall ? NOMINAL_MASS : 1);
+      const expected = name === 'mass' ? ofMass : computed[name];
       if (!(value > 0) || !(expected > 0)) continue;
       rows.get(name)?.push(at);
       logs.get(name)?.push(Math.log(value / expected));

@@ -12,12 +12,12 @@ const SUSPICIOUS = 3; // errors in one row, from which a shift is likelier than 
 export const filled = (cells: readonly string[]) => cells.map(cellText).filter((cell) => cell !== '');
 
 /** The row with its cells moved by one from some column on, where that makes it sound: the fault that says so. */
-export function shiftFinding(line: FileLine, plan: Plan, names: NameFacts): Finding | null {
+export function shiftFinding(line: FileLine, width: number, plan: Plan, names: NameFacts): Finding | null {
   const { number, cells } = line;
   for (let from = 0; from < plan.width; from++) {
     for (const by of [-1, 1] as const) {
       const moved = shifted(cells, from, by);
-      if (filled(moved.slice(plan.width)).length > 0) continue;
+      if (moved.length < width || filled(moved.slice(width)).length > 0) continue;
       const row = judgeLine({ number, cells: moved }, plan, names);
       if (hasError(row) || row.dimensions === null) continue;
       const heading = plan.headings[from] ?? '';
@@ -176,8 +176,9 @@ const OF_SIZES: ReadonlySet<string> = new Set([
  */
 export function explained(row: JudgedRow, plan: Plan, names: NameFacts): readonly Finding[] {
   const errors = row.findings.filter(isError);
-  if (errors.length >= SUSPICIOUS) {
-    const shift = shiftFinding(row.line, plan, names);
+  const isGap = errors.length > 1 && errors.some(({ cause }) => cause === 'missing');
+  if (errors.length >= SUSPICIOUS || isGap) {
+    const shift = shiftFinding(row.line, row.line.cells.length, plan, names);
     if (shift) return [shift];
   }
   const ofSizes = row.findings.filter(({ cause }) => OF_SIZES.has(cause));

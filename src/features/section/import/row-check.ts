@@ -88,7 +88,7 @@ export class RowCheck implements RowReading {
 
   private ragged(line: FileLine, width: number): Finding {
     const isTried = this.tried++ < EXPLAINED_IN_BLOCK;
-    const shift = isTried ? shiftFinding(line, this.plan, this.facts.names) : null;
+    const shift = isTried ? shiftFinding(line, width, this.plan, this.facts.names) : null;
     if (shift) return shift;
     const { cells, number } = line;
     const message = `The row has ${cells.length} cells where the headings have ${width}. A mark is missing or too many.`;

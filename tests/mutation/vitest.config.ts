@@ -10,5 +10,7 @@ export default defineConfig({
       'tests/published/{exact-beams,solve-examples,beam-tables,chart}.test.ts',
     ],
     setupFiles: 'tests/support/seed.ts',
+    // A busy machine is no reason to call a mutant caught; Stryker itself ends what does not end.
+    testTimeout: 60_000,
   },
 });

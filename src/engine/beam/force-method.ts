@@ -37,9 +37,9 @@ export function forceMethod(beam: Beam, chosen?: readonly Redundant[]): ForceMet
     loads: superpose(flexibility, { ...solved, values: none }),
     units: units.map((_, i) => superpose(flexibility, { ...unloaded, values: none.with(i, Wide.ONE) })),
     flexibility: flexibilityMatrix(rows),
-    gaps: solved.gaps.map((gap) => gap.rounded() + 0),
-    imposed: solved.imposed.map((movement) => movement.rounded() + 0),
-    values: solved.values.map((value) => value.rounded() + 0),
+    gaps: solved.gaps.map((gap) => gap.rounded()),
+    imposed: solved.imposed.map((movement) => movement.rounded()),
+    values: solved.values.map((value) => value.rounded()),
   };
 }
 

@@ -36,9 +36,9 @@ export function prepareBeam(beam: Beam, redundants?: readonly Redundant[]): Prep
           redundants: [...flexibility.redundants],
           eligible: [...eligible],
           flexibility: matrix.map((row) => [...row]),
-          gaps: solving.gaps.map((value) => value.rounded() + 0),
-          imposed: solving.imposed.map((value) => value.rounded() + 0),
-          values: solving.values.map((value) => value.rounded() + 0),
+          gaps: solving.gaps.map((value) => value.rounded()),
+          imposed: solving.imposed.map((value) => value.rounded()),
+          values: solving.values.map((value) => value.rounded()),
         },
       };
     },

@@ -87,6 +87,6 @@ function supportReactions(
 ): Reaction[] {
   return beam.supports.map(({ at }) => {
     const i = mesh.index.get(at)!;
-    return { at, vertical: up[i]!.rounded() + 0, moment: turn[i]!.rounded() + 0 };
+    return { at, vertical: up[i]!.rounded(), moment: turn[i]!.rounded() };
   });
 }

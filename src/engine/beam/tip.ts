@@ -63,7 +63,7 @@ function partsOf(
     total: evaluate(diagrams.deflection, at)[0],
     settlement: evaluate(diagrams.deflection, root)[side],
     rotation: outward * turn * (to - from) + 0,
-    bending: integralOfProduct(curvatureOf(beam, diagrams.moment), arm) + 0,
+    bending: integralOfProduct(curvatureOf(beam, diagrams.moment), arm),
     shear: -outward * integralOfProduct(slip, over([1])) + 0,
   };
 }

@@ -1,3 +1,4 @@
+import { fileURLToPath } from 'node:url';
 import mdx from '@astrojs/mdx';
 import node from '@astrojs/node';
 import react from '@astrojs/react';
@@ -48,6 +49,8 @@ export default defineConfig({
   },
   vite: {
     plugins: [tailwindcss()],
+    // Workers of the browser are built without Astro's plugins, its alias among them.
+    resolve: { alias: { '@': fileURLToPath(new URL('./src', import.meta.url)) } },
     // Small faces of KaTeX would be written into its style sheet, where the content policy keeps them from loading.
     build: { assetsInlineLimit: (file) => (file.endsWith('.woff2') ? false : undefined) },
   },

@@ -1,12 +1,5 @@
 import { dimensionFaults } from './dimension-faults';
-import {
-  cornerRadii,
-  depthOf,
-  nominalWall,
-  type SectionDimensions,
-  type TubeStandard,
-  widthOf,
-} from './dimensions';
+import { cornerRadii, nominalWall, type SectionDimensions, type TubeStandard } from './dimensions';
 import { type SectionProperties, sectionProperties } from './properties';
 import { slipCause } from './slip';
 
@@ -70,6 +63,7 @@ const TIMBER_I: Limits = { warning: 0.002, error: 0.002 };
 const WARPING: Limits = { warning: 0.03, error: Number.POSITIVE_INFINITY };
 const CHANNEL_WARPING: Limits = { warning: 0.12, error: Number.POSITIVE_INFINITY };
 const A500_MASS = 1.07;
+const OPEN_TORSION: Limits = { warning: 0.15, error: Number.POSITIVE_INFINITY }; // tapered, tees, angles
 const TUBE_TORSION: Limits = { warning: 0.08, error: Number.POSITIVE_INFINITY };
 const WITHOUT_ROOTS = 0.07; // fillets are left out of the computed value
 
@@ -209,7 +203,8 @@ function checkTorsion(comparison: Comparison, d: SectionDimensions, j: number): 
     const formula = 'I_t from 1 to 1.6 times Σ b t³/3';
     comparison.findings.push({ rule: 'torsion', severity, property: 'j', expected: j, formula, cause });
   } else {
-    comparison.check('torsion', 'j', j, 'I_t of the solid section', TUBE_TORSION);
+    const isOpen = 'tf' in d || d.shape === 'angle';
+    comparison.check('torsion', 'j', j, 'I_t from the dimensions', isOpen ? OPEN_TORSION : TUBE_TORSION);
   }
 }
 
@@ -219,10 +214,10 @@ function checkWarping(comparison: Comparison, d: SectionDimensions, iMinor: numb
   if (d.shape === 'i') {
     const expected = (iMinor * (d.h - d.tf) ** 2) / 4;
     comparison.check('warping', 'iw', expected, 'I_w = I minor (h − t_f)²/4', WARPING);
-  } else if (d.shape === 'channel') {
-    comparison.check('warping', 'iw', computed, 'I_w of the mid-lines of the channel', CHANNEL_WARPING);
-  } else if (value > 0) {
-    const formula = 'I_w of a closed or solid section is 0';
+  } else if (computed > 0) {
+    comparison.check('warping', 'iw', computed, 'I_w of the mid-lines', CHANNEL_WARPING);
+  } else if (value > 0 && d.shape !== 'tee') {
+    const formula = 'I_w of a tube, an angle or a solid section is 0';
     comparison.findings.push({
       rule: 'warping',
       severity: 'warning',
@@ -287,7 +282,7 @@ const THIN_FLANGE = 0.8; // of the web
 const SLENDER = [0.9, 4.5] as const; // depth over width of an I
 
 function checkProportions(comparison: Comparison, d: SectionDimensions): void {
-  if (d.shape !== 'i') return;
+  if (d.shape !== 'i' && d.shape !== 'tapered_i') return;
   const ratio = d.h / d.b;
   if (d.tf < THIN_FLANGE * d.tw) {
     const formula = `t_f/t_w is ${(d.tf / d.tw).toFixed(2)}; usual is 0.80 or more`;
@@ -325,15 +320,23 @@ export function plausibilityFindings(
   const { iMajor, iMinor, areAxesRight } = checkSecondMoments(comparison, d, computed, options, pick);
   const isMajorOrdered = checkOrder(comparison, 'Major', computed);
   const isMinorOrdered = checkOrder(comparison, 'Minor', computed);
-  const limits = { ...PLASTIC, warning: options.taperedFlanges ? TAPERED.warning : PLASTIC.warning, above };
+  const isTapered = options.taperedFlanges || 'slope' in d;
+  const limits = { ...PLASTIC, warning: isTapered ? TAPERED.warning : PLASTIC.warning, above };
   if (isMajorOrdered) {
-    comparison.check('elastic_modulus', 'wElMajor', iMajor / (depthOf(d) / 2), 'W_el = I/(h/2)', ELASTIC);
+    const farthest = computed.iMajor / computed.wElMajor;
+    comparison.check('elastic_modulus', 'wElMajor', iMajor / farthest, 'W_el = I/c', ELASTIC);
     checkPlastic(comparison, 'Major', computed, SHAPE_FACTORS[d.shape], limits);
   }
   if (isMinorOrdered) {
-    const farthest = Math.max(computed.centroid, widthOf(d) - computed.centroid);
+    const farthest = computed.iMinor / computed.wElMinor;
     comparison.check('elastic_modulus', 'wElMinor', iMinor / farthest, 'W_el = I/c', ELASTIC);
-    checkPlastic(comparison, 'Minor', computed, d.shape === 'i' ? MINOR_SHAPE_FACTOR : null, limits);
+    checkPlastic(
+      comparison,
+      'Minor',
+      computed,
+      d.shape === 'i' || d.shape === 'tapered_i' ? MINOR_SHAPE_FACTOR : null,
+      limits,
+    );
   }
   comparison.check('gyration', 'rMajor', Math.sqrt(iMajor / area), 'i = √(I/A)', GYRATION);
   comparison.check('gyration', 'rMinor', Math.sqrt(iMinor / area), 'i = √(I/A)', GYRATION);
@@ -357,7 +360,7 @@ function checkSecondMoments(
 ) {
   const above = roomForRoots(d, rootRadiusKnown);
   const limitsOf = (rolled: Limits) =>
-    d.shape === 'rectangle' ? TIMBER_I : { ...(taperedFlanges ? TAPERED : rolled), above };
+    d.shape === 'rectangle' ? TIMBER_I : { ...(taperedFlanges || 'slope' in d ? TAPERED : rolled), above };
   const major = limitsOf(I_MAJOR);
   const areAxesRight = checkAxes(comparison, computed, major.warning);
   const check = (property: 'iMajor' | 'iMinor', limits: Limits) =>

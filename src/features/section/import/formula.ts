@@ -60,6 +60,13 @@ const FORMULAS: Readonly<Record<string, { readonly [Name in TabulatedName]?: str
   },
 };
 
+/** Shapes whose formulas are those of another, tapered ones with the mean thickness of their flanges. */
+const SAME_FORMULAS: Readonly<Record<string, string>> = {
+  shs: 'rhs',
+  tapered_i: 'i',
+  tapered_channel: 'channel',
+};
+
 const SYMBOLS: Readonly<Record<string, string>> = { tw: 't_w', tf: 't_f', ro: 'r_o', ri: 'r_i' };
 
 /** "h 178, b 90, t_w 5, t_f 7.6, r 8 mm". */
@@ -86,7 +93,7 @@ export function withNumbers(found: Finding, d: SectionDimensions, values: Values
     case 'warping':
       return `${found.formula} with ${sizesInWords(d)}`;
     default: {
-      const shape = d.shape === 'shs' ? 'rhs' : d.shape;
+      const shape = SAME_FORMULAS[d.shape] ?? d.shape;
       return `${FORMULAS[shape]?.[found.property] ?? found.formula} with ${sizesInWords(d)}`;
     }
   }

@@ -3,7 +3,7 @@ import { cellText, halfDigit } from './cells';
 import type { Cause, Finding, NameFacts, NumberField, RuleNumber } from './contract';
 import { dropRow, findingOf } from './finding';
 import { columnOf, type NumberColumn, type Plan } from './plan';
-import type { RowRead, Values } from './reading';
+import { isRolled, type RowRead, type Values } from './reading';
 
 const INCH = 0.0254; // m
 const MILLIMETRE = 0.001; // m
@@ -18,11 +18,9 @@ function nominalUnit(size: number, measured: number): number {
   return off(INCH) < off(MILLIMETRE) ? INCH : MILLIMETRE;
 }
 
-const isFlanged = (shape: SectionShape | null) => shape === 'i' || shape === 'channel';
-
 /** The mass that a name ends with, and that of the row, in the unit of its column. */
 function massesOf(row: RowRead, column: NumberColumn | undefined) {
-  if (!isFlanged(row.shape)) return null;
+  if (!isRolled(row.shape)) return null;
   const sizes = sizesOf(row);
   const { mass } = row.values;
   if (sizes.length < 2 || mass === undefined || !column) return null;
@@ -36,7 +34,7 @@ const BELOW = 0.95; // of what the name and its family say: light ones, HE AA, a
 const ABOVE = 1.6; // heavy columns are rolled far above their serial depth
 
 function depthRatio({ name, values, shape }: RowRead): { size: number; unit: number; ratio: number } | null {
-  if (!isFlanged(shape)) return null;
+  if (!isRolled(shape)) return null;
   const [size] = sizesOf({ name });
   if (size === undefined || size === 0 || values.h === undefined) return null;
   const unit = nominalUnit(size, values.h);

@@ -56,6 +56,10 @@ type Place = {
   read: string;
 };
 
+/** Shapes that are rolled in series, named by serial depth and mass. */
+export const isRolled = (shape: SectionShape | null): boolean =>
+  shape === 'i' || shape === 'channel' || shape === 'tapered_i' || shape === 'tapered_channel';
+
 /** A finding of one cell. */
 export function cellFinding(
   { line, printed, column, read }: Place,
@@ -121,7 +125,18 @@ const SHAPE_WORDS: Readonly<Record<string, SectionShape>> = {
   bar: 'round',
 };
 
+/** A file of tapered flanges says so once, not in every row. */
+const TAPERED: Readonly<Partial<Record<SectionShape, SectionShape>>> = {
+  i: 'tapered_i',
+  channel: 'tapered_channel',
+};
+
 function readShape(line: FileLine, plan: Plan, printed: string, findings: Finding[]): SectionShape | null {
+  const shape = shapeOf(line, plan, printed, findings);
+  return plan.mapping.flanges === 'tapered' && shape !== null ? (TAPERED[shape] ?? shape) : shape;
+}
+
+function shapeOf(line: FileLine, plan: Plan, printed: string, findings: Finding[]): SectionShape | null {
   if (plan.shape === null) return plan.mapping.shape;
   const read = cellText(line.cells[plan.shape] ?? '').toLowerCase();
   if (isShape(read)) return read;

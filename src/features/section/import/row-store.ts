@@ -7,7 +7,7 @@ import {
   type SectionShape,
 } from '@/engine/section';
 import type { Mapping, NumberField } from './contract';
-import { dimensionsOf, type RowRead, SIZES, type Values } from './reading';
+import { dimensionsOf, isRolled, type RowRead, SIZES, type Values } from './reading';
 
 const FIRST = 1024; // rows; doubled whenever they are full
 
@@ -53,7 +53,7 @@ export class RowStore {
     this.lines.push(line.number);
     this.printed.push(printed);
     this.keys.push(keyOfParts(name));
-    this.serials.push(shape === 'i' || shape === 'channel' ? serialOf(name) : null);
+    this.serials.push(isRolled(shape) ? serialOf(name) : null);
     this.shapes.push(shape === null ? -1 : SECTION_SHAPES.indexOf(shape));
     for (const field of this.fields) {
       const value = values[field];

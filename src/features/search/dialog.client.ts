@@ -76,6 +76,8 @@ class SearchDialog {
   #asking = new AbortController();
   #timer: ReturnType<typeof setTimeout> | undefined;
   #phase: 'answered' | 'asking' | 'failed' = 'answered';
+  /** One of the list was chosen by an arrow, and nothing typed since. */
+  #isPicked = false;
   /** Enter came before the answer: the first of it is opened. */
   #opensFirst = false;
 
@@ -97,16 +99,17 @@ class SearchDialog {
     this.#list.addEventListener('click', (event) => this.#onClick(event));
   }
 
-  /** With what is typed already. */
-  start(): void {
+  /** With what is typed already, and whether Enter was pressed on it. */
+  start(isEntered: boolean): void {
     this.#input.focus();
     this.#onInput();
+    if (isEntered) this.#onEnter(false);
   }
 
   /** With what was typed last, ready to be typed over. */
   startAgain(): void {
     this.#input.select();
-    this.start();
+    this.start(false);
   }
 
   get #q(): string {
@@ -117,6 +120,7 @@ class SearchDialog {
     clearTimeout(this.#timer);
     this.#asking.abort();
     this.#opensFirst = false;
+    this.#isPicked = false;
   }
 
   #onInput(): void {
@@ -185,6 +189,7 @@ class SearchDialog {
   #choose(at: number): void {
     this.#drawn[this.#chosen]?.setAttribute('aria-selected', 'false');
     this.#chosen = at;
+    this.#isPicked = false;
     const option = this.#drawn[at];
     if (option) {
       option.setAttribute('aria-selected', 'true');
@@ -199,18 +204,17 @@ class SearchDialog {
     if (event.key === 'Enter') {
       event.preventDefault();
       this.#onEnter(event.ctrlKey || event.metaKey);
-    } else if (count > 0 && event.key === 'ArrowDown') {
+    } else if (count > 0 && (event.key === 'ArrowDown' || event.key === 'ArrowUp')) {
       event.preventDefault();
-      this.#choose((this.#chosen + 1) % count);
-    } else if (count > 0 && event.key === 'ArrowUp') {
-      event.preventDefault();
-      this.#choose(this.#chosen <= 0 ? count - 1 : this.#chosen - 1);
+      const before = this.#chosen <= 0 ? count - 1 : this.#chosen - 1;
+      this.#choose(event.key === 'ArrowUp' ? before : (this.#chosen + 1) % count);
+      this.#isPicked = true;
     }
   }
 
   #onEnter(isNewTab: boolean): void {
     const option = this.#options[this.#chosen];
-    if (this.#phase === 'answered') {
+    if (this.#phase === 'answered' || this.#isPicked) {
       if (option) this.#open(option, isNewTab);
       return;
     }
@@ -244,11 +248,11 @@ class SearchDialog {
 
 let started: SearchDialog | undefined;
 
-export function startSearch(dialog: HTMLDialogElement): void {
+export function startSearch(dialog: HTMLDialogElement, isEntered: boolean): void {
   if (started) {
     started.startAgain();
     return;
   }
   started = new SearchDialog(dialog);
-  started.start();
+  started.start(isEntered);
 }

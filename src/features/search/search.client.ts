@@ -13,10 +13,21 @@ const dialog = document.querySelector<HTMLDialogElement>('[data-search-dialog]')
 
 async function open(): Promise<void> {
   if (!dialog) return;
-  // At once, so that what is typed while the rest is read is not lost.
+  // At once, so that what is typed while the rest is read is not lost, nor Enter; without the rest the form does the same.
   dialog.showModal();
-  const { startSearch } = await import('./dialog.client');
-  startSearch(dialog);
+  const reading = new AbortController();
+  let isEntered = false;
+  const onSubmit = (event: Event) => {
+    event.preventDefault();
+    isEntered = true;
+  };
+  dialog.addEventListener('submit', onSubmit, { signal: reading.signal });
+  try {
+    const { startSearch } = await import('./dialog.client');
+    startSearch(dialog, isEntered);
+  } finally {
+    reading.abort();
+  }
 }
 
 document.addEventListener('keydown', (event) => {

@@ -34,7 +34,12 @@ export function SymbolAt({ at }: { readonly at: Pointer }) {
       onBlur={commit}
       onKeyDown={(event) => {
         if (event.key === 'Enter') commit();
-        if (event.key === 'Escape') setTyped(symbol);
+        const isUndo = (event.ctrlKey || event.metaKey) && event.key.toLowerCase() === 'z';
+        if (typed === symbol || (event.key !== 'Escape' && !isUndo)) return;
+        // What is not in the draft yet is taken back here.
+        event.preventDefault();
+        event.stopPropagation();
+        setTyped(symbol);
       }}
     />
   );

@@ -4,7 +4,7 @@ import { DraftView, type SaveDraft } from '@/features/review/draft';
 import type { Fault } from '@/lib/app-error';
 import { paths } from '@/paths';
 
-export type DraftSaving =
+type DraftSaving =
   | { readonly kind: 'saved'; readonly draft: DraftView }
   /** Somebody saved before: the draft as it stands now. */
   | { readonly kind: 'stale'; readonly current: DraftView }

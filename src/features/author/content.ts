@@ -18,7 +18,7 @@ export const contentOf = ({
 
 export const sameContent = (a: Content, b: Content): boolean => sameValue(a, b);
 
-export interface MergedContent {
+interface MergedContent {
   readonly content: Content;
   /** With pointers into the content: '/document/name', '/change_note'. */
   readonly conflicts: readonly Conflict[];

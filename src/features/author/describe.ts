@@ -6,7 +6,7 @@ import { type DraftSteps, sameText } from './draft-steps';
 import { listAt, textAt, valueAt } from './edit';
 import { sameValue } from './merge';
 
-export function arrangementOf(document: Written): Arrangement {
+function arrangementOf(document: Written): Arrangement {
   const supports = holdingSupports(document).filter(({ isSometimes }) => !isSometimes);
   const bays = baysOf(document);
   const spans = bays.filter(({ is }) => is === 'span').length;
@@ -18,7 +18,7 @@ export function arrangementOf(document: Written): Arrangement {
   return bays.some(({ is }) => is !== 'span') ? 'overhang' : 'simple-span';
 }
 
-export function loadKindsOf(document: Written): LoadKind[] {
+function loadKindsOf(document: Written): LoadKind[] {
   const kinds = new Set<LoadKind>();
   for (const load of listAt(document, '/beam/loads')) {
     const kind = textAt(load, '/kind');

@@ -73,7 +73,7 @@ export const listAt = (document: unknown, pointer: Pointer): readonly unknown[] 
 };
 
 /** A document after an edit, and the edit that takes it back. Lists and objects that it does not touch are the same. */
-export interface Edited {
+interface Edited {
   readonly document: Written;
   readonly inverse: Edit;
 }

@@ -8,7 +8,7 @@ export interface Conflict {
   readonly theirs: unknown;
 }
 
-export interface Merged {
+interface Merged {
   readonly merged: unknown;
   readonly conflicts: readonly Conflict[];
 }
@@ -193,7 +193,7 @@ export function decide(
 }
 
 /** A pointer after an entry of a list was removed: those behind it move up. */
-export function movedUp(at: Pointer, list: Pointer, removed: number): Pointer {
+function movedUp(at: Pointer, list: Pointer, removed: number): Pointer {
   const entry = at.startsWith(`${list}/`) ? /^\d+(?=\/|$)/.exec(at.slice(list.length + 1))?.[0] : undefined;
   if (entry === undefined || Number(entry) <= removed) return at;
   return `${list}/${Number(entry) - 1}${at.slice(list.length + 1 + entry.length)}`;

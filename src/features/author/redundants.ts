@@ -9,7 +9,7 @@ export type WrittenRedundant =
   | { readonly support: string; readonly component: 'vertical' | 'rotation' }
   | { readonly at: string; readonly component: 'moment' };
 
-export interface Releasable {
+interface Releasable {
   readonly degree: number;
   readonly eligible: readonly WrittenRedundant[];
   readonly usual: readonly WrittenRedundant[];

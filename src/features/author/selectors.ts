@@ -14,7 +14,7 @@ export const QUANTITY_NAMES = {
   contraflexure: 'Point of contraflexure',
   figure: 'A figure made of these',
 } as const;
-export type QuantityName = keyof typeof QUANTITY_NAMES;
+type QuantityName = keyof typeof QUANTITY_NAMES;
 
 /** Each as it begins. */
 const BEGINNINGS: Readonly<Record<QuantityName, object>> = {

@@ -36,7 +36,7 @@ export function useListAt(at: Pointer): readonly unknown[] {
 /** Of each list of faults, by pointer: made once for all the fields. */
 const byPointer = new WeakMap<readonly Fault[], ReadonlyMap<string, string>>();
 
-export function faultMap(faults: readonly Fault[]): ReadonlyMap<string, string> {
+function faultMap(faults: readonly Fault[]): ReadonlyMap<string, string> {
   const known = byPointer.get(faults);
   if (known) return known;
   const map = new Map([...faults].reverse().map(({ pointer, message }) => [pointer, message]));

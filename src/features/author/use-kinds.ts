@@ -1,5 +1,5 @@
 import { createContext, useContext } from 'react';
-import type { Expected, Kinds } from '@/engine/template/author';
+import type { Kinds } from '@/engine/template/author';
 import type { Written } from '@/features/review/draft';
 import { symbolNames } from './complete';
 import { listAt, textAt } from './edit';
@@ -7,7 +7,7 @@ import { kindsIn, type Scene } from './expression';
 import { useSnapshot } from './use-editor';
 
 /** What the expressions inside speak of. */
-export interface ExpressionScene {
+interface ExpressionScene {
   readonly scene: Scene;
   /** The list that the part is repeated over. */
   readonly repeat: string;
@@ -69,5 +69,3 @@ export function useKinds(): Kinds {
 
 export const useSymbolNames = (): ReadonlyMap<string, string> =>
   useSnapshot(({ history }) => vocabulary(history.document).names);
-
-export type { Expected };

@@ -54,12 +54,14 @@ describe('preparing an empty database', () => {
       await owner`select kind, count(*)::int as count, bool_and(state = 'issued' and number = 1) as issued,
       bool_and(author_id <> reviewer_id) as reviewed from document d join revision r on r.document_id = d.id group by kind`;
     const whole = (kind: string, count: number) => ({ kind, count, issued: true, reviewed: true });
-    expect(found).toHaveLength(3);
+    expect(found).toHaveLength(5);
     expect(found).toEqual(
       expect.arrayContaining([
         whole('template', shipped('templates')),
         whole('section-table', shipped('sections')),
         whole('criteria', shipped('criteria')),
+        whole('combination-set', shipped('combinations')),
+        whole('material-set', shipped('materials')),
       ]),
     );
   });

@@ -7,6 +7,7 @@ import { createDraft, type DraftKey, takeStep } from '@/features/review/review.s
 import { editionBody, fillEdition } from '@/features/section/edition.server';
 import { readSectionTable } from '@/features/section/import';
 import { sectionTableMetaSchema } from '@/features/section/section';
+import { shippedSet } from './criteria';
 import type { Member } from './practice';
 import { shippedTemplate } from './templates';
 
@@ -85,9 +86,18 @@ export async function issueSections(pair: Pair, slug: string): Promise<DraftKey>
   );
 }
 
-/** Shipped criteria, issued. */
+/** A shipped combination set, issued. */
+export const issueCombinations = async (pair: Pair, slug: string): Promise<DraftKey> => {
+  const body = shippedSet(slug);
+  const { reference, name } = body;
+  const document: Document = { kind: 'combination-set', slug, reference, name, body };
+  return issue(pair, await draft(pair.author, document, 'First issue.'));
+};
+
+/** Shipped criteria, issued after the combination set that they refer to. */
 export const issueCriteria = async (pair: Pair, slug: string): Promise<DraftKey & { slug: string }> => {
   const body = criteriaDocument.parse(JSON.parse(readFileSync(`data/criteria/${slug}.json`, 'utf8')));
+  if (body.schema_version === 2) await issueCombinations(pair, body.combinations.set);
   const { reference, name } = body;
   const document: Document = { kind: 'criteria', slug, reference, name, body };
   return { ...(await issue(pair, await draft(pair.author, document, 'First issue.'))), slug };

@@ -1,5 +1,5 @@
 import { readFileSync } from 'node:fs';
-import { type Criteria, criteriaDocument } from '@/engine/check';
+import type { Criteria } from '@/engine/check';
 import type { UnitSystemName } from '@/engine/quantity';
 import { designationKey, materialFor } from '@/engine/section';
 import type { Template } from '@/engine/template';
@@ -12,6 +12,7 @@ import {
   toSectionValues,
 } from '@/features/section/section';
 import { toSubject } from '@/features/why/subject';
+import { shippedCriteria } from './criteria';
 import { shippedTemplate } from './templates';
 
 interface DemoMember {
@@ -80,7 +81,7 @@ export const demoPage = ({ template, parameters, section, criteria, self_weight 
     template: shippedTemplate(template),
     parameters,
     section: section ? sectionOf(section) : null,
-    criteria: criteria ? criteriaDocument.parse(readJson(`data/criteria/${criteria}.json`)) : null,
+    criteria: criteria ? shippedCriteria(criteria) : null,
     system: criteria?.endsWith('-us') ? 'us' : 'metric',
     ownWeight: self_weight ?? true,
   });

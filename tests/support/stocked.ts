@@ -1,3 +1,4 @@
+import { seedCombinations } from '@/db/seed/combinations';
 import { seedCriteria } from '@/db/seed/criteria';
 import { seedMaterials } from '@/db/seed/materials';
 import { seedSections } from '@/db/seed/sections';
@@ -12,6 +13,7 @@ export async function stockLibrary(librarian: Member, checker: Member): Promise<
   ]);
   await seedSections(people);
   await seedMaterials(people);
+  await seedCombinations(people);
   await seedCriteria(people);
   await seedTemplates(people);
 }

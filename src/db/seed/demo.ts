@@ -1,4 +1,5 @@
 import { proveIssued } from '@/features/proof/prove.server';
+import { seedCombinations } from './combinations';
 import { seedCriteria } from './criteria';
 import { seedMaterials } from './materials';
 import { seedMembers } from './members';
@@ -16,6 +17,7 @@ export async function seedDemo(): Promise<boolean> {
   if (!people) return false;
   await seedSections(people);
   await seedMaterials(people);
+  await seedCombinations(people);
   await seedCriteria(people);
   await seedTemplates(people);
   await seedMembers(people);

@@ -1,8 +1,14 @@
+export type { Pattern } from '../combination/index';
 export {
   type Criteria,
+  type CriteriaDocument,
+  type CriteriaOfSet,
   criteriaDocument,
+  criteriaOfSet,
   type DeflectionLimit,
-  type Pattern,
+  LIMIT_NAMES,
+  resolveCriteria,
+  unfitting,
 } from './criteria';
 export { deflectionId } from './deflection';
 export { checkMember } from './member';

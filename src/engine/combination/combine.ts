@@ -36,7 +36,7 @@ function scaled(load: Load, factor: number): Load {
 }
 
 /** "1.35 G + 1.5 Q": the groups that act, a factor of 1 left out. */
-const nameOf = (factors: readonly (readonly [string, number])[], letters: GroupLetters): string =>
+export const named = (factors: readonly (readonly [string, number])[], letters: GroupLetters): string =>
   factors
     .map(([group, factor]) => `${factor === 1 ? '' : `${factor} `}${own(letters, group) ?? group}`)
     .join(' + ');
@@ -56,7 +56,7 @@ export function actingCombinations(
       .map((group) => [group, factorOf(combination, group)] as const)
       .filter(([, factor]) => factor !== 0);
     if (acting.length === 0) continue;
-    const name = nameOf(acting, letters);
+    const name = named(acting, letters);
     if (!distinct.has(name)) distinct.set(name, { name, factors: Object.fromEntries(acting) });
   }
   return [...distinct.values()];

@@ -6,7 +6,23 @@ export {
   type GroupLetters,
 } from './combine';
 export { cutLoads } from './cut';
-export { groupsOf, LOAD_GROUP_NAMES, LOAD_GROUPS } from './groups';
+export { groupsOf, LOAD_GROUP_NAMES, LOAD_GROUPS, type LoadGroup } from './groups';
 export { stillBeam, supportsMove } from './movements';
 export { type Region, regionsOf } from './regions';
+export {
+  type Categories,
+  type CombinationSet,
+  categoryOf,
+  combinationsIn,
+  LIMIT_STATES,
+  type LimitState,
+  type Pattern,
+  REDUCTIONS,
+  type Reduction,
+  type SetCategory,
+  type SetCombination,
+  type SetFactor,
+  serviceOf,
+  strengthOf,
+} from './set';
 export { type ArrangementNamer, arrangementNamer } from './words';

@@ -1,15 +1,21 @@
 import { type Tenant, withPractice } from '@/db/tenancy';
-import { type Criteria, criteriaDocument } from '@/engine/check';
+import { type CriteriaDocument, criteriaDocument } from '@/engine/check';
 import { type Person, requirePermission } from '@/features/account/permission';
-import { currentRevisions } from '@/features/review/library.server';
+import { currentRevisions, type LibraryRevision } from '@/features/review/library.server';
 
 export interface IssuedCriteria {
   readonly slug: string;
   readonly reference: string;
   readonly name: string;
   readonly revision: number;
-  readonly document: Criteria;
+  readonly document: CriteriaDocument;
 }
+
+/** A revision of criteria, read: of before there were combination sets too. */
+export const asCriteria = (revision: LibraryRevision) => ({
+  ...revision,
+  document: criteriaDocument.parse(revision.body),
+});
 
 /** The criteria that a member may be judged by: the issued revision of each. */
 export function listCriteria(actor: Person & Tenant): Promise<IssuedCriteria[]> {

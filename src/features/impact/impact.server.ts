@@ -10,7 +10,6 @@ import { may, requirePermission } from '@/features/account/permission';
 import type { RevisionKey } from '@/features/review/draft';
 import { unfinishedOf } from '@/features/review/draft';
 import { namesOf } from '@/features/review/people.server';
-import { KIND_NAMES } from '@/features/review/review';
 import {
   type Actor,
   type RevisionRow,
@@ -61,12 +60,6 @@ export function askImpact(actor: Actor, key: RevisionKey, page: Page): Promise<P
 
 /** The issued revision that this one would take the place of. */
 async function issuedBeside(tx: Tx, row: RevisionRow): Promise<RevisionRow> {
-  const { kind } = row.of;
-  if (kind === 'combination-set')
-    throw new AppError(
-      'conflict',
-      `Members do not pin a ${KIND_NAMES[kind]} itself: there is nothing to weigh.`,
-    );
   if (row.state !== 'draft' && row.state !== 'in_review')
     throw new AppError(
       'conflict',

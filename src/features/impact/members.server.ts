@@ -4,10 +4,13 @@ import type { Tx } from '@/db/client';
 import { job } from '@/db/schema/job';
 import { member } from '@/db/schema/member';
 import { section } from '@/db/schema/section';
-import { type Criteria, criteriaDocument } from '@/engine/check';
+import { type CriteriaDocument, resolveCriteria } from '@/engine/check';
+import type { CombinationSet } from '@/engine/combination';
 import { type Material, materialFor, materialIn } from '@/engine/section';
 import type { Template } from '@/engine/template';
 import { ENGINE_VERSION } from '@/engine/version';
+import { readSet } from '@/features/combination/combination.server';
+import { asCriteria } from '@/features/criteria/criteria.server';
 import { readMaterials } from '@/features/material/material.server';
 import type { MemberInputs } from '@/features/member/evaluate';
 import { stored } from '@/features/member/row.server';
@@ -15,12 +18,13 @@ import { revisionsById } from '@/features/review/library.server';
 import type { SectionValues } from '@/features/section/resolve';
 import { templateOf } from '@/features/template/template.server';
 import type { Compared } from './figures';
-import type { Found } from './weigh';
+import type { Found, Held } from './weigh';
 
 /** What members pin, read once for all of them. */
 export class Pinned {
   private readonly templates = new Map<string, Template>();
-  private readonly criteria = new Map<string, Criteria>();
+  private readonly criteria = new Map<string, CriteriaDocument>();
+  private readonly sets = new Map<string, CombinationSet>();
   private readonly materials = new Map<string, readonly Material[]>();
   private readonly sections = new Map<string, { key: string; values: SectionValues }>();
 
@@ -30,12 +34,15 @@ export class Pinned {
     const templates = missing(this.templates, rows, (row) => row.templateRevisionId);
     const criteria = missing(this.criteria, rows, (row) => row.criteriaRevisionId);
     const materials = missing(this.materials, rows, (row) => row.materialRevisionId);
-    const revisions = await revisionsById(tx, this.practiceId, [...templates, ...criteria, ...materials]);
+    const sets = missing(this.sets, rows, (row) => row.combinationRevisionId);
+    const wanted = [...templates, ...criteria, ...materials, ...sets];
+    const revisions = await revisionsById(tx, this.practiceId, wanted);
     for (const one of revisions)
       if (templates.includes(one.revisionId)) this.templates.set(one.revisionId, templateOf(one));
       else if (materials.includes(one.revisionId))
         this.materials.set(one.revisionId, readMaterials(one).materials);
-      else this.criteria.set(one.revisionId, criteriaDocument.parse(one.body));
+      else if (sets.includes(one.revisionId)) this.sets.set(one.revisionId, readSet(one).document);
+      else this.criteria.set(one.revisionId, asCriteria(one).document);
     const sections = missing(this.sections, rows, (row) => row.sectionId);
     if (sections.length === 0) return;
     const found = await tx
@@ -52,23 +59,26 @@ export class Pinned {
       : materialIn(known(this.materials, materialRevisionId), id);
   }
 
-  /** What the member is evaluated from, and the key of its section. */
-  inputsOf(row: MemberRow): { inputs: MemberInputs; sectionKey: string | null } {
+  /** What the member is evaluated from, and what a replacement is put in place of. */
+  inputsOf(row: MemberRow): { inputs: MemberInputs; held: Held } {
     const settings = stored.settings.parse(row.settings);
     const pinned = row.sectionId === null ? null : known(this.sections, row.sectionId);
     const material = pinned && this.materialOf(row);
+    const { criteriaRevisionId, combinationRevisionId } = row;
+    const criteria = criteriaRevisionId === null ? null : known(this.criteria, criteriaRevisionId);
+    const set = combinationRevisionId === null ? null : known(this.sets, combinationRevisionId);
     return {
       inputs: {
         template: known(this.templates, row.templateRevisionId),
         parameters: stored.parameters.parse(row.parameters),
         system: row.unitSystem,
         section: pinned && material ? { values: pinned.values, material } : null,
-        criteria: row.criteriaRevisionId === null ? null : known(this.criteria, row.criteriaRevisionId),
+        criteria: criteria && resolveCriteria(criteria, set, settings.categories),
         ownWeight: settings.self_weight,
         patterns: settings.patterns,
         redundants: settings.redundants ?? undefined,
       },
-      sectionKey: pinned?.key ?? null,
+      held: { sectionKey: pinned?.key ?? null, criteria, set, categories: settings.categories },
     };
   }
 }
@@ -115,6 +125,7 @@ export const readMembers = (tx: Tx, practiceId: string, ids: readonly string[]) 
       id: member.id,
       templateRevisionId: member.templateRevisionId,
       criteriaRevisionId: member.criteriaRevisionId,
+      combinationRevisionId: member.combinationRevisionId,
       sectionId: member.sectionId,
       material: member.material,
       materialRevisionId: member.materialRevisionId,

@@ -7,6 +7,8 @@ import { withPractice } from '@/db/tenancy';
 import { criteriaDocument } from '@/engine/check';
 import { materialsOf } from '@/engine/section';
 import { ENGINE_VERSION } from '@/engine/version';
+import { combinationSetDocument } from '@/features/combination/combination';
+import { referredSet } from '@/features/combination/combination.server';
 import { materialSetDocument } from '@/features/material/material';
 import { asWorker, eachPractice, takeTurn } from '@/features/proof/run.server';
 import { type RevisionRow, requireRevisionById } from '@/features/review/rows.server';
@@ -110,14 +112,21 @@ async function replacementOf(tx: Tx, row: RevisionRow): Promise<Replacement> {
     case 'template':
       return { kind: 'template', template: templateOf(row) };
     case 'criteria':
-      return { kind: 'criteria', criteria: criteriaDocument.parse(row.body) };
+      return criteriaReplacement(tx, row);
+    case 'combination-set':
+      return { kind: 'combination-set', set: combinationSetDocument.parse(row.body) };
     case 'material-set':
       return { kind: 'material-set', materials: materialsOf(materialSetDocument.parse(row.body)) };
     case 'section-table':
       return { kind: 'section-table', sections: await sectionsOf(tx, row.practiceId, row.id) };
-    default:
-      throw new RangeError(`Members pin no ${row.of.kind}`);
   }
+}
+
+async function criteriaReplacement(tx: Tx, row: RevisionRow): Promise<Replacement> {
+  const criteria = criteriaDocument.parse(row.body);
+  const set =
+    criteria.schema_version === 2 ? await referredSet(tx, row.practiceId, criteria.combinations) : undefined;
+  return { kind: 'criteria', criteria, set: set?.document ?? null };
 }
 
 type Shared = Pick<Weighing, 'replacement' | 'pinned'> & { readonly practiceId: string };
@@ -140,8 +149,8 @@ async function weighBatch(
     const row = byId.get(memberId);
     let found: Ranked = unread('Whoever changed it last can no longer open its job.');
     if (row) {
-      const { inputs, sectionKey } = pinned.inputsOf(row);
-      found = weigh(inputs, storedFigures(row) ?? findFigures(inputs), replacement, sectionKey);
+      const { inputs, held } = pinned.inputsOf(row);
+      found = weigh(inputs, storedFigures(row) ?? findFigures(inputs), replacement, held);
     }
     kept.push({ memberId, ...found });
     await setImmediate(); // the worker has other things to do as well

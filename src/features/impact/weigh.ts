@@ -1,5 +1,6 @@
 /** A member held against itself with another revision in place of one that it pins. Pure. */
-import type { Criteria } from '@/engine/check';
+import { type CriteriaDocument, resolveCriteria, unfitting } from '@/engine/check';
+import type { Categories, CombinationSet } from '@/engine/combination';
 import { type Material, materialIn } from '@/engine/section';
 import { judgeRules, type Template } from '@/engine/template';
 import { carryOver, parameterChanges } from '@/features/member/carry';
@@ -11,10 +12,20 @@ import type { Weighed } from './impact';
 /** What takes the place of what a member pins. */
 export type Replacement =
   | { readonly kind: 'template'; readonly template: Template }
-  | { readonly kind: 'criteria'; readonly criteria: Criteria }
+  /** With the set that the criteria refer to; a member that pins another one keeps it. */
+  | { readonly kind: 'criteria'; readonly criteria: CriteriaDocument; readonly set: CombinationSet | null }
+  | { readonly kind: 'combination-set'; readonly set: CombinationSet }
   | { readonly kind: 'material-set'; readonly materials: readonly Material[] }
   /** By the section's designation key; what is not there is not in the edition. */
   | { readonly kind: 'section-table'; readonly sections: ReadonlyMap<string, SectionValues> };
+
+/** What the member pins, as its documents say it: what a replacement is put in place of. */
+export interface Held {
+  readonly sectionKey: string | null;
+  readonly criteria: CriteriaDocument | null;
+  readonly set: CombinationSet | null;
+  readonly categories: Categories;
+}
 
 /** The figures that are compared, or why there are none. */
 export type Found =
@@ -52,17 +63,14 @@ export const unread = (message: string): Ranked => ({
 });
 
 /** What a member comes to with the replacement, beside what it came to before. */
-export function weigh(
-  inputs: MemberInputs,
-  before: Found,
-  replacement: Replacement,
-  sectionKey: string | null,
-): Ranked {
+export function weigh(inputs: MemberInputs, before: Found, replacement: Replacement, held: Held): Ranked {
   const changed =
     replacement.kind === 'template'
       ? parameterChanges(inputs.template, replacement.template)
       : { gone: [], taken: [] };
-  const after = replaced(inputs, replacement, sectionKey);
+  const unfit = unfitFor(replacement, held);
+  if (unfit) return lost(unfit);
+  const after = replaced(inputs, replacement, held);
   if (!after)
     return lost(
       `${missingPart(inputs, replacement)} is not in the new ${replacement.kind === 'section-table' ? 'edition' : 'revision'}.`,
@@ -123,7 +131,22 @@ const fromNothing = (compared: Compared): Changes => ({
   largest: 1,
 });
 
-function replaced(inputs: MemberInputs, replacement: Replacement, key: string | null): MemberInputs | null {
+/** Criteria and combinations with the replacement in its place. */
+function basisWith(replacement: Replacement, { criteria, set }: Held) {
+  if (replacement.kind === 'criteria') return { criteria: replacement.criteria, set: set ?? replacement.set };
+  return replacement.kind === 'combination-set' ? { criteria, set: replacement.set } : null;
+}
+
+/** Why the new criteria and combinations do not go together; null where they do. */
+function unfitFor(replacement: Replacement, held: Held): string | null {
+  const basis = basisWith(replacement, held);
+  if (basis?.criteria?.schema_version !== 2) return null;
+  return basis.set
+    ? (unfitting(basis.criteria, basis.set)[0]?.message ?? null)
+    : `The combination set ${basis.criteria.combinations.set} is not there.`;
+}
+
+function replaced(inputs: MemberInputs, replacement: Replacement, held: Held): MemberInputs | null {
   switch (replacement.kind) {
     case 'template': {
       const { template } = replacement;
@@ -136,13 +159,18 @@ function replaced(inputs: MemberInputs, replacement: Replacement, key: string | 
       return { ...inputs, template, parameters };
     }
     case 'criteria':
-      return { ...inputs, criteria: replacement.criteria };
+    case 'combination-set': {
+      const basis = basisWith(replacement, held);
+      const criteria = basis?.criteria && resolveCriteria(basis.criteria, basis.set, held.categories);
+      return { ...inputs, criteria: criteria ?? null };
+    }
     case 'material-set': {
       const { section } = inputs;
       const material = section && materialIn(replacement.materials, section.material.id);
       return material ? { ...inputs, section: { ...section, material } } : null;
     }
     case 'section-table': {
+      const { sectionKey: key } = held;
       const values = key === null ? undefined : replacement.sections.get(key);
       return inputs.section && values ? { ...inputs, section: { ...inputs.section, values } } : null;
     }

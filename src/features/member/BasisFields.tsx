@@ -3,11 +3,19 @@ import { ChoiceField, Field } from '@/components/ui/Field';
 import { choiceOf } from '@/features/material/material';
 import type { FieldFaults } from '@/features/template/faults';
 import { isMadeOf } from '@/features/template/section-pick';
-import type { CriteriaChoice, Draft, DraftSection, WorkspaceData } from './workspace';
+import { CombinationFields } from './CombinationFields';
+import type { MemberInputs } from './evaluate';
+import {
+  type CriteriaChoice,
+  type Draft,
+  type DraftSection,
+  judgedBy,
+  type WorkspaceData,
+} from './workspace';
 
 interface BasisFieldsProps {
   readonly draft: Draft;
-  readonly data: Pick<WorkspaceData, 'criteria' | 'materials'>;
+  readonly data: Pick<WorkspaceData, 'criteria' | 'sets' | 'materials'>;
   readonly faults: FieldFaults;
   readonly onChange: (part: Partial<Draft>) => void;
 }
@@ -41,16 +49,23 @@ export function BasisFields({ draft, data, faults, onChange }: BasisFieldsProps)
           ]}
           error={faults.get('criteria')}
           help={criteria.find(({ slug }) => slug === draft.criteria)?.document.summary}
-          onChange={(event) => onChange({ criteria: event.target.value })}
+          onChange={(event) => onChange(chosenCriteria(criteria, event.target.value))}
         />
-        <Patterns
-          draft={draft}
-          criteria={criteria.find(({ slug }) => slug === draft.criteria)}
-          onChange={onChange}
-        />
+        <CombinationFields draft={draft} data={data} faults={faults} onChange={onChange} />
+        <Patterns draft={draft} judged={judgedBy(draft, data)} onChange={onChange} />
       </div>
     </>
   );
+}
+
+/** Other criteria bring the combinations that they refer to. */
+function chosenCriteria(
+  criteria: readonly CriteriaChoice[],
+  chosen: string,
+): Pick<Draft, 'criteria' | 'combinations'> {
+  const document = criteria.find(({ slug }) => slug === chosen)?.document;
+  const combinations = document?.schema_version === 2 ? document.combinations.set : '';
+  return { criteria: chosen, combinations };
 }
 
 /** Those of the section's kind; by their sets where two have a name in common. */
@@ -96,12 +111,12 @@ function OwnWeight({ draft, onChange }: Pick<BasisFieldsProps, 'draft' | 'onChan
 /** Which groups act only where adverse: the criteria say so, and the member may not, for a reason. */
 function Patterns({
   draft,
-  criteria,
+  judged,
   onChange,
-}: Pick<BasisFieldsProps, 'draft' | 'onChange'> & { readonly criteria: CriteriaChoice | undefined }) {
-  const patterned = (criteria?.document.patterns ?? [])
+}: Pick<BasisFieldsProps, 'draft' | 'onChange'> & { readonly judged: MemberInputs['criteria'] }) {
+  const patterned = (judged?.patterns ?? [])
     .filter(({ where_adverse }) => where_adverse)
-    .map(({ group, basis }) => ({ letter: criteria?.document.letters?.[group] ?? group, basis }));
+    .map(({ group, basis }) => ({ letter: judged?.letters?.[group] ?? group, basis }));
   if (patterned.length === 0) return null;
   return (
     <>

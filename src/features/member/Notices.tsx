@@ -15,7 +15,7 @@ interface PinNoticesProps {
 
 /** What is to be known of what the member pins, and what is newer: shown before and after, upgraded when it is pressed. */
 export function PinNotices({ member, host }: PinNoticesProps) {
-  const { template, criteria, section, materials } = member;
+  const { template, criteria, combinations, section, materials } = member;
   const lines = [
     ...pinLine(template, (template_revision) => ({ template_revision })),
     ...factLines(`${template.reference} revision ${template.revision}`, template),
@@ -23,6 +23,12 @@ export function PinNotices({ member, host }: PinNoticesProps) {
       ? [
           ...pinLine(criteria, (criteria_revision) => ({ criteria_revision })),
           ...factLines(`${criteria.reference} revision ${criteria.revision}`, criteria),
+        ]
+      : []),
+    ...(combinations
+      ? [
+          ...pinLine(combinations, (combinations_revision) => ({ combinations_revision })),
+          ...factLines(`${combinations.reference} revision ${combinations.revision}`, combinations),
         ]
       : []),
     ...(section ? editionLines(section) : []),

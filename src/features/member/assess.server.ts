@@ -1,3 +1,4 @@
+import { resolveCriteria } from '@/engine/check';
 import { type DerivationStep, derive } from '@/engine/derivation';
 import type { UnitSystemName } from '@/engine/quantity';
 import { ENGINE_VERSION } from '@/engine/version';
@@ -9,7 +10,7 @@ import type { SaveMember, TriedView } from './member';
 import type { Pins } from './pins.server';
 import { type StoredResult, toStoredResult } from './result';
 
-export type Given = Pick<SaveMember, 'parameters' | 'self_weight' | 'patterns' | 'redundants'>;
+export type Given = Pick<SaveMember, 'parameters' | 'self_weight' | 'patterns' | 'categories' | 'redundants'>;
 
 export interface Assessment extends TriedView {
   readonly result: StoredResult;
@@ -37,13 +38,14 @@ const derivationOf = (
  * what is pinned, the engine's version and the result itself. 422 at the inputs for what cannot be evaluated.
  */
 export function assessMember(pins: Pins, given: Given, system: UnitSystemName): Assessment {
-  const { template, criteria, section } = pins;
+  const { template, criteria, combinations, section } = pins;
   const reading = evaluateMember({
     template: template.document,
     parameters: given.parameters,
     system,
     section: section && { values: section.row.values, material: section.material },
-    criteria: criteria?.document ?? null,
+    criteria:
+      criteria && resolveCriteria(criteria.document, combinations?.document ?? null, given.categories),
     ownWeight: given.self_weight,
     patterns: given.patterns,
     redundants: given.redundants ?? undefined,
@@ -61,6 +63,7 @@ export function assessMember(pins: Pins, given: Given, system: UnitSystemName): 
     pins: {
       template: template.sha256,
       criteria: criteria?.sha256 ?? null,
+      ...(combinations && { combinations: combinations.sha256 }),
       section: section && { edition: section.row.sha256, values: section.row.values },
       ...(section?.set && { materials: section.set.sha256 }),
     },

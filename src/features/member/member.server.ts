@@ -8,9 +8,10 @@ import { materialKey } from '@/features/material/material';
 import { decideByUpgrade } from '@/features/review/recall.server';
 import { AppError, invalid, stale } from '@/lib/app-error';
 import { type Assessment, assessMember } from './assess.server';
+import { placeBasis } from './basis.server';
 import { carryOver } from './carry';
 import type { MemberItem, MemberView, NewMember, SaveMember, TriedView, TryMember } from './member';
-import { loadPins, moveTemplate, type Pins, placeCriteria, placeSection, placeTemplate } from './pins.server';
+import { loadPins, moveTemplate, type Pins, placeSection, placeTemplate } from './pins.server';
 import { findMember, pageOfMembers, requireMember, type Settings, toMemberView } from './row.server';
 
 /** The members of a job by their marks, removed ones too. */
@@ -44,7 +45,7 @@ export function createMember(actor: Actor, number: string, body: NewMember): Pro
     if (there) throw markTaken(body.mark, there.status === 'removed');
     const pins = {
       template: await placeTemplate(tx, practiceId, body.template),
-      criteria: await placeCriteria(tx, practiceId, body.criteria, null),
+      ...(await placeBasis(tx, practiceId, body, { criteria: null, combinations: null })),
       section: await placeSection(tx, practiceId, body.section, null),
     };
     const given = { ...body, parameters: whole(pins.template.document, body.parameters) };
@@ -92,7 +93,7 @@ export function saveMember(
     if (before.version !== version) throw stale(was);
     const pins = {
       template: await moveTemplate(tx, practiceId, pinned.template, body.template_revision),
-      criteria: await placeCriteria(tx, practiceId, body.criteria, pinned.criteria, body.criteria_revision),
+      ...(await placeBasis(tx, practiceId, body, pinned)),
       section: await placeSection(tx, practiceId, body.section, pinned.section, body),
     };
     const parameters = carryOver(pinned.template.document, pins.template.document, body.parameters);
@@ -127,10 +128,14 @@ export function tryMember(actor: Actor, number: string, mark: string, body: TryM
     const job = await openJob(tx, actor, number, 'member.read');
     const row = await requireMember(tx, practiceId, job.id, mark);
     const pinned = await loadPins(tx, practiceId, row);
-    const { criteria = pinned.criteria?.slug ?? null, section = choiceOf(pinned.section) } = body;
+    const {
+      criteria = pinned.criteria?.slug ?? null,
+      combinations = null,
+      section = choiceOf(pinned.section),
+    } = body;
     const pins = {
       template: await moveTemplate(tx, practiceId, pinned.template, body.template_revision),
-      criteria: await placeCriteria(tx, practiceId, criteria, pinned.criteria, body.criteria_revision),
+      ...(await placeBasis(tx, practiceId, { ...body, criteria, combinations }, pinned)),
       section: await placeSection(tx, practiceId, section, pinned.section, body),
     };
     const given = {
@@ -140,6 +145,7 @@ export function tryMember(actor: Actor, number: string, mark: string, body: TryM
       }),
       self_weight: body.self_weight ?? row.settings.self_weight,
       patterns: body.patterns ?? row.settings.patterns,
+      categories: body.categories ?? row.settings.categories,
       redundants: body.redundants === undefined ? row.settings.redundants : body.redundants,
     };
     return assessMember(pins, given, job.unitSystem);
@@ -163,8 +169,9 @@ const toGiven = ({
   parameters,
   self_weight,
   patterns,
+  categories,
   redundants,
-}: Omit<NewMember, 'mark' | 'template'>) => ({ parameters, self_weight, patterns, redundants });
+}: Omit<NewMember, 'mark' | 'template'>) => ({ parameters, self_weight, patterns, categories, redundants });
 
 function toColumns(
   body: Omit<NewMember, 'mark' | 'template'> & { readonly reason: string },
@@ -178,6 +185,7 @@ function toColumns(
     patterns: body.patterns,
     patterns_reason: body.patterns_reason,
     redundants: body.redundants,
+    categories: body.categories,
     reason: body.reason,
   };
   return {
@@ -185,6 +193,7 @@ function toColumns(
     purpose: body.purpose,
     templateRevisionId: pins.template.revisionId,
     criteriaRevisionId: pins.criteria?.revisionId ?? null,
+    combinationRevisionId: pins.combinations?.revisionId ?? null,
     sectionId: pins.section?.row.id ?? null,
     material: pins.section?.material.id ?? null,
     materialRevisionId: pins.section?.set?.revisionId ?? null,
@@ -236,6 +245,7 @@ const traceOf = ({
   section,
   materials,
   criteria,
+  combinations,
   ...view
 }: MemberView) => ({
   title,
@@ -247,6 +257,8 @@ const traceOf = ({
   section: section && `${section.table} ${section.edition} ${section.designation} ${section.material}`,
   materials: materials && `${materials.slug} ${materials.revision}`,
   criteria: criteria && `${criteria.slug} ${criteria.revision}`,
+  combinations: combinations && `${combinations.slug} ${combinations.revision}`,
+  categories: view.categories,
   parameters: view.parameters,
   self_weight: view.self_weight,
   self_weight_reason: view.self_weight_reason,

@@ -1,4 +1,5 @@
 import { z } from 'zod';
+import { LOAD_GROUPS } from '@/engine/combination';
 import { Redundant } from '@/features/beam/request';
 import { pinFacts } from '@/features/review/pin';
 import { REVISION_STATES } from '@/features/review/review';
@@ -22,6 +23,10 @@ const inputs = {
   section: sectionChoice.nullable(),
   /** The slug of the criteria that it is judged by. */
   criteria: line(80).nullable(),
+  /** The slug of the combination set that they are held against; null: the one that they refer to. */
+  combinations: line(80).nullable(),
+  /** What the variable groups are, by the categories of the set; the criteria’s or the usual ones where not given. */
+  categories: z.partialRecord(z.enum(LOAD_GROUPS), line(40)),
   self_weight: z.boolean(),
   /** Why the section's own weight is left out; printed on the sheet. */
   self_weight_reason: line(300),
@@ -37,6 +42,8 @@ const withDefaults = {
   parameters: inputs.parameters.default({}),
   section: inputs.section.default(null),
   criteria: inputs.criteria.default(null),
+  combinations: inputs.combinations.default(null),
+  categories: inputs.categories.default({}),
   self_weight: inputs.self_weight.default(true),
   self_weight_reason: inputs.self_weight_reason.default(''),
   patterns: inputs.patterns.default(true),
@@ -51,6 +58,7 @@ const withDefaults = {
 const moves = {
   template_revision: z.int().positive().optional(),
   criteria_revision: z.int().positive().optional(),
+  combinations_revision: z.int().positive().optional(),
   section_edition: z.int().positive().optional(),
   material_revision: z.int().positive().optional(),
 };
@@ -161,6 +169,8 @@ export const MemberView = z.strictObject({
   /** The set that the section's material is read from; null without a section, or for a material as it was shipped. */
   materials: Pin.nullable(),
   criteria: Pin.nullable(),
+  /** Null without criteria, and where they have combinations of their own. */
+  combinations: Pin.nullable(),
   ...Evaluated,
   evaluated_at: z.iso.datetime().nullable(),
   evaluated_by: z.string().nullable(),

@@ -1,7 +1,9 @@
 import type { Tx } from '@/db/client';
-import { type Criteria, criteriaDocument } from '@/engine/check';
+import type { CriteriaDocument } from '@/engine/check';
 import { materialIn } from '@/engine/section';
 import type { Template } from '@/engine/template';
+import { type ReadSet, readSet } from '@/features/combination/combination.server';
+import { asCriteria } from '@/features/criteria/criteria.server';
 import {
   type PlacedMaterial,
   pinnedMaterial,
@@ -14,13 +16,15 @@ import { holdForUse } from '@/features/review/pin.server';
 import type { DocumentKind } from '@/features/review/review';
 import { type ChosenSection, chooseSection, pinnedSection } from '@/features/section/choose.server';
 import { templateOf } from '@/features/template/template.server';
-import { type Fault, invalid } from '@/lib/app-error';
 import type { Moves, Pin, SaveMember } from './member';
+import { movedTo, refused, withdrawn } from './revision.server';
 
 /** The library documents that a member pins, read. */
 export interface Pins {
   readonly template: LibraryRevision & { readonly document: Template };
-  readonly criteria: (LibraryRevision & { readonly document: Criteria }) | null;
+  readonly criteria: (LibraryRevision & { readonly document: CriteriaDocument }) | null;
+  /** What the criteria are held against; null without criteria, and where they have combinations of their own. */
+  readonly combinations: ReadSet | null;
   readonly section: ({ readonly row: ChosenSection } & PlacedMaterial) | null;
 }
 
@@ -28,6 +32,7 @@ export interface Pins {
 export interface PinIds {
   readonly templateRevisionId: string;
   readonly criteriaRevisionId: string | null;
+  readonly combinationRevisionId: string | null;
   readonly sectionId: string | null;
   readonly material: string | null;
   readonly materialRevisionId: string | null;
@@ -45,14 +50,10 @@ const asTemplate = (revision: LibraryRevision) => ({
   ...revision,
   document: templateOf(revision),
 });
-const asCriteria = (revision: LibraryRevision) => ({
-  ...revision,
-  document: criteriaDocument.parse(revision.body),
-});
 
 export async function loadPins(tx: Tx, practiceId: string, ids: PinIds): Promise<Pins> {
-  const { templateRevisionId, criteriaRevisionId } = ids;
-  const wanted = [templateRevisionId, criteriaRevisionId].filter((id) => id !== null);
+  const { templateRevisionId, criteriaRevisionId, combinationRevisionId } = ids;
+  const wanted = [templateRevisionId, criteriaRevisionId, combinationRevisionId].filter((id) => id !== null);
   const revisions = await revisionsById(tx, practiceId, wanted);
   const revision = (what: string, id: string): LibraryRevision => {
     const found = revisions.find(({ revisionId }) => revisionId === id);
@@ -62,6 +63,8 @@ export async function loadPins(tx: Tx, practiceId: string, ids: PinIds): Promise
   return {
     template: asTemplate(revision('template revision', templateRevisionId)),
     criteria: criteriaRevisionId === null ? null : asCriteria(revision('criteria', criteriaRevisionId)),
+    combinations:
+      combinationRevisionId === null ? null : readSet(revision('combinations', combinationRevisionId)),
     section: ids.sectionId === null ? null : await loadSection(tx, practiceId, ids.sectionId, ids),
   };
 }
@@ -78,14 +81,6 @@ async function loadSection(
   if (!placed) throw new MissingPin('material', `${material} of ${materialRevisionId}`);
   return { row, ...placed };
 }
-
-const refused = (pointer: string, code: string, message: string) => {
-  const fault: Fault = { pointer, code, message };
-  return invalid([fault]);
-};
-
-const withdrawn = (found: LibraryRevision | undefined): string =>
-  found?.withdrawalReason ? `: revision ${found.number} was withdrawn (${found.withdrawalReason})` : '';
 
 /** The issued revision of a template, for a new member; 422 where there is none to place. */
 export async function placeTemplate(tx: Tx, practiceId: string, slug: string): Promise<Pins['template']> {
@@ -114,55 +109,7 @@ export async function moveTemplate(
   number: number | undefined,
 ): Promise<Pins['template']> {
   if (number === undefined || number === pinned.number) return pinned;
-  return asTemplate(await issuedRevision(tx, practiceId, 'template', pinned.slug, number));
-}
-
-/** Where a request names the revision to move to. */
-const MOVED_AT = {
-  template: '/template_revision',
-  criteria: '/criteria_revision',
-  'material-set': '/material_revision',
-} as const;
-
-/** A revision of a document that a member pins already: its review does not stand in the way of leaving an older one. */
-async function issuedRevision(
-  tx: Tx,
-  practiceId: string,
-  kind: keyof typeof MOVED_AT,
-  slug: string,
-  number: number,
-): Promise<LibraryRevision> {
-  const at = MOVED_AT[kind];
-  const found = await findRevision(tx, practiceId, { kind, slug, number });
-  if (!found)
-    throw refused(at, 'unknown_revision', `“${slug}” has no revision ${number}. Choose one that is issued.`);
-  await holdForUse(tx, practiceId, found.revisionId, at, { isNew: false });
-  return found;
-}
-
-/** Criteria as named: those that are pinned stay as they are unless moved, others come in their issued revision. */
-export async function placeCriteria(
-  tx: Tx,
-  practiceId: string,
-  slug: string | null,
-  pinned: Pins['criteria'],
-  number?: number,
-): Promise<Pins['criteria']> {
-  if (slug === null) return null;
-  if (pinned?.slug === slug)
-    return number === undefined || number === pinned.number
-      ? pinned
-      : asCriteria(await issuedRevision(tx, practiceId, 'criteria', slug, number));
-  const found = await findRevision(tx, practiceId, { kind: 'criteria', slug });
-  if (found?.state === 'issued') {
-    await holdForUse(tx, practiceId, found.revisionId, '/criteria');
-    return asCriteria(found);
-  }
-  throw refused(
-    '/criteria',
-    found ? 'not_issued' : 'unknown_criteria',
-    `There are no issued criteria “${slug}”${withdrawn(found)}. Choose from the list.`,
-  );
+  return asTemplate(await movedTo(tx, practiceId, 'template', pinned.slug, number));
 }
 
 /** What a section is made of, of the revision of its set to move to. */
@@ -176,7 +123,7 @@ async function materialOf(
   const placed = await placeMaterial(tx, practiceId, key, pinned);
   const { set, material } = placed;
   if (number === undefined || !set || number === set.number) return { set, material };
-  const moved = readMaterials(await issuedRevision(tx, practiceId, 'material-set', set.slug, number));
+  const moved = readMaterials(await movedTo(tx, practiceId, 'material-set', set.slug, number));
   const other = materialIn(moved.materials, material.id);
   if (other) return { set: moved.set, material: other };
   throw refused(

@@ -25,6 +25,7 @@ export const stored = {
     patterns: z.boolean().default(true),
     patterns_reason: z.string().default(''),
     redundants: SaveMember.shape.redundants,
+    categories: SaveMember.shape.categories,
     /** Why the member was removed. */
     reason: z.string(),
   }),
@@ -156,10 +157,11 @@ function toMemberItem(row: MemberRow, template: LibraryRevision | undefined, rec
 /** A member as it is read, with what it pins and what is newer by now. */
 export async function toMemberView(tx: Tx, row: MemberRow, job: string, pins?: Pins): Promise<MemberView> {
   const { practiceId, settings } = row;
-  const { template, criteria, section } = pins ?? (await loadPins(tx, practiceId, row));
+  const { template, criteria, combinations, section } = pins ?? (await loadPins(tx, practiceId, row));
   const pinned = [
     template.revisionId,
     criteria?.revisionId,
+    combinations?.revisionId,
     section?.row.revisionId,
     section?.set?.revisionId,
   ];
@@ -194,6 +196,9 @@ export async function toMemberView(tx: Tx, row: MemberRow, job: string, pins?: P
       ? await toPin(tx, practiceId, 'material-set', section.set, facts.get(section.set.revisionId))
       : null,
     criteria: criteria && (await toPin(tx, practiceId, 'criteria', criteria, facts.get(criteria.revisionId))),
+    combinations:
+      combinations &&
+      (await toPin(tx, practiceId, 'combination-set', combinations, facts.get(combinations.revisionId))),
     result: row.result,
     fingerprint: row.fingerprint,
     engine_version: row.engineVersion,

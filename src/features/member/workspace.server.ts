@@ -5,6 +5,7 @@ import { auditEvent } from '@/db/schema/audit';
 import { withPractice } from '@/db/tenancy';
 import { MATERIALS } from '@/engine/section';
 import { may } from '@/features/account/permission';
+import { issuedSets, type ReadSet } from '@/features/combination/combination.server';
 import { listCriteria } from '@/features/criteria/criteria.server';
 import { type Actor, openJob } from '@/features/job/job.server';
 import { type MaterialChoice, materialKey } from '@/features/material/material';
@@ -12,7 +13,7 @@ import { issuedMaterials, readMaterials } from '@/features/material/material.ser
 import { toRowOrigin } from '@/features/section/section';
 import { loadPins, type Pins } from './pins.server';
 import { requireMember, toMemberView } from './row.server';
-import { changesOf, type HistoryLine, type WorkspaceData } from './workspace';
+import { type CombinationChoice, changesOf, type HistoryLine, type WorkspaceData } from './workspace';
 
 const actor = aliasedTable(person, 'actor');
 
@@ -22,7 +23,9 @@ export async function readWorkspace(user: Actor, number: string, mark: string): 
   return withPractice(user, async (tx) => {
     const job = await openJob(tx, user, number, 'member.read');
     const row = await requireMember(tx, user.practiceId, job.id, mark);
-    const { template, criteria, section } = await loadPins(tx, user.practiceId, row);
+    const pins = await loadPins(tx, user.practiceId, row);
+    const { template, criteria, combinations, section } = pins;
+    const sets = (await issuedSets(tx, user.practiceId)).filter(({ slug }) => slug !== combinations?.slug);
     const others = issued.filter(({ slug }) => slug !== criteria?.slug);
     const pinned = criteria && {
       slug: criteria.slug,
@@ -32,19 +35,28 @@ export async function readWorkspace(user: Actor, number: string, mark: string): 
       document: criteria.document,
     };
     return {
-      member: await toMemberView(tx, row, job.number, { template, criteria, section }),
+      member: await toMemberView(tx, row, job.number, pins),
       job: { number: job.number, name: job.name, unitSystem: job.unitSystem },
       template: template.document,
       section: section?.row.values ?? null,
       materials: await materialChoices(tx, user.practiceId, section),
       sectionOrigin: section ? toRowOrigin(section.row) : undefined,
       criteria: pinned ? [pinned, ...others] : others,
+      sets: [...(combinations ? [combinations] : []), ...sets].map(toChoice),
       history: await historyOf(tx, user.practiceId, row.id),
       // The database opened the job to this person; what is left to ask is the role.
       mayEdit: job.status === 'open' && may(user, 'member.edit', { access: 'practice' }),
     };
   });
 }
+
+const toChoice = ({ slug, reference, name, number, document }: ReadSet): CombinationChoice => ({
+  slug,
+  reference,
+  name,
+  revision: number,
+  document,
+});
 
 /** What sections may be made of: the pinned revision of its set, and the issued one of every other. */
 async function materialChoices(

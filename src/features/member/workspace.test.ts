@@ -1,7 +1,6 @@
 import { describe, expect, test } from 'vitest';
-import { criteriaDocument } from '@/engine/check';
 import { MATERIALS, materialFor } from '@/engine/section';
-import criteria from '../../../data/criteria/steel-elastic-en.json';
+import { shippedCriteria } from '../../../tests/support/criteria';
 import { shippedTemplate } from '../../../tests/support/templates';
 import { draftSection, sectionQuery, utilisationWith } from './candidates';
 import { evaluateMember, type MemberInputs } from './evaluate';
@@ -27,7 +26,7 @@ const inputs = (change: Partial<MemberInputs> = {}): MemberInputs => ({
   parameters: { L: '6 m', a: '1.8 m', w: { G: '5.52 kN/m', S: '3.6 kN/m' } },
   system: 'metric',
   section: { values: IPE_300, material: S355 },
-  criteria: criteriaDocument.parse(criteria),
+  criteria: shippedCriteria('steel-elastic-en'),
   ownWeight: true,
   patterns: true,
   ...change,
@@ -192,6 +191,8 @@ describe('two versions of a member', () => {
     parameters: { L: '6 m', w: { G: '5 kN/m' } },
     section: null,
     criteria: null,
+    combinations: null,
+    categories: {},
     self_weight: true,
     self_weight_reason: '',
     patterns: true,

@@ -1,5 +1,6 @@
 /** What the member's sheet works with, and the draft that a person makes of it before it is saved. Pure. */
-import type { Criteria } from '@/engine/check';
+import { type CriteriaDocument, resolveCriteria, unfitting } from '@/engine/check';
+import type { CombinationSet } from '@/engine/combination';
 import type { Redundant } from '@/engine/model';
 import type { UnitSystemName } from '@/engine/quantity';
 import type { Template } from '@/engine/template';
@@ -15,8 +16,10 @@ export interface CriteriaChoice {
   readonly reference: string;
   readonly name: string;
   readonly revision: number;
-  readonly document: Criteria;
+  readonly document: CriteriaDocument;
 }
+
+export type CombinationChoice = Omit<CriteriaChoice, 'document'> & { readonly document: CombinationSet };
 
 export interface HistoryLine {
   readonly at: string;
@@ -34,6 +37,7 @@ export interface WorkspaceData {
   readonly sectionOrigin?: RowOrigin | undefined;
   readonly materials: readonly MaterialChoice[];
   readonly criteria: readonly CriteriaChoice[];
+  readonly sets: readonly CombinationChoice[];
   readonly history: readonly HistoryLine[];
   readonly mayEdit: boolean;
 }
@@ -52,6 +56,9 @@ export interface Draft {
   readonly raw: Raw;
   readonly section: DraftSection | null;
   readonly criteria: string;
+  /** The slug of a combination set; empty for criteria that have their own. */
+  readonly combinations: string;
+  readonly categories: SaveMember['categories'];
   readonly selfWeight: boolean;
   readonly selfWeightReason: string;
   readonly patterns: boolean;
@@ -77,6 +84,8 @@ export const toDraft = (
       ? { values, table: member.section.table, material: keyOf(member, member.section) }
       : null,
   criteria: member.criteria?.slug ?? '',
+  combinations: member.combinations?.slug ?? '',
+  categories: member.categories,
   selfWeight: member.self_weight,
   selfWeightReason: member.self_weight_reason,
   patterns: member.patterns,
@@ -105,6 +114,8 @@ export const toBody = (draft: Draft, template: Template, { status, reason }: Sta
     material: draft.section.material,
   },
   criteria: draft.criteria || null,
+  combinations: draft.combinations || null,
+  categories: draft.categories,
   self_weight: draft.selfWeight,
   self_weight_reason: draft.selfWeightReason.trim(),
   patterns: draft.patterns,
@@ -115,19 +126,34 @@ export const toBody = (draft: Draft, template: Template, { status, reason }: Sta
 /** What the draft is evaluated from, in the browser as on the server. */
 export function toInputs(
   draft: Draft,
-  { template, materials, criteria, job }: Pick<WorkspaceData, 'template' | 'materials' | 'criteria' | 'job'>,
+  data: Pick<WorkspaceData, 'template' | 'materials' | 'criteria' | 'sets' | 'job'>,
 ): MemberInputs {
+  const { template, materials, job } = data;
   const material = draft.section && choiceOf(materials, draft.section.material)?.material;
   return {
     template,
     parameters: toParameters(template, draft.raw),
     system: job.unitSystem,
     section: draft.section && material ? { values: draft.section.values, material } : null,
-    criteria: criteria.find(({ slug }) => slug === draft.criteria)?.document ?? null,
+    criteria: judgedBy(draft, data),
     ownWeight: draft.selfWeight,
     patterns: draft.patterns,
     redundants: draft.redundants ?? undefined,
   };
+}
+
+/** The criteria with the combinations that are chosen; null where they do not go together, and the field says so. */
+export function judgedBy(
+  draft: Pick<Draft, 'criteria' | 'combinations' | 'categories'>,
+  { criteria, sets }: Pick<WorkspaceData, 'criteria' | 'sets'>,
+): MemberInputs['criteria'] {
+  const document = criteria.find(({ slug }) => slug === draft.criteria)?.document;
+  if (!document) return null;
+  if (document.schema_version === 1) return resolveCriteria(document, null);
+  const set = sets.find(({ slug }) => slug === draft.combinations)?.document;
+  return set && unfitting(document, set).length === 0
+    ? resolveCriteria(document, set, draft.categories)
+    : null;
 }
 
 /** One field in which two versions differ, in words. */
@@ -155,6 +181,8 @@ const NAMES: Readonly<Record<string, string>> = {
   reason: 'Reason of removal',
   section: 'Section',
   criteria: 'Criteria',
+  combinations: 'Combinations',
+  categories: 'Categories of loads',
   template: 'Template',
   self_weight: 'Own weight',
   self_weight_reason: 'Own weight left out because',
@@ -198,6 +226,8 @@ export const bodyOf = (member: MemberView): SaveMember => ({
     material: keyOf(member, member.section),
   },
   criteria: member.criteria?.slug ?? null,
+  combinations: member.combinations?.slug ?? null,
+  categories: member.categories,
   self_weight: member.self_weight,
   self_weight_reason: member.self_weight_reason,
   patterns: member.patterns,

@@ -21,6 +21,7 @@ import {
   requireRevision,
   requireRevisionById,
 } from './rows.server';
+import { schemaVersionOf } from './written.server';
 
 /** What a draft begins with. */
 interface Start {
@@ -50,7 +51,7 @@ export function beginDraft(actor: Actor, key: DocumentKey, body: NewDraft): Prom
       reference: named.reference,
       name: named.name,
       body: kept.body,
-      schemaVersion: 1,
+      schemaVersion: schemaVersionOf(key.kind),
       changeNote: body.change_note,
       changeClass: body.change_class,
       consequence: body.consequence,

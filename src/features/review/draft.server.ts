@@ -18,11 +18,12 @@ import {
 } from './draft';
 import { namesOf } from './people.server';
 import { isReferenceTaken, nameIn, referenceIn, referenceTaken } from './reference.server';
+import { referredFaults } from './referred.server';
 import { stateName } from './review';
 import { type Actor, type DocumentRow, keyOf, type RevisionRow, requireRevision } from './rows.server';
 import { relativeRevision } from './uses.server';
 import { asWritten } from './written';
-import { readerOf } from './written.server';
+import { readerOf, schemaVersionOf } from './written.server';
 
 /** A revision as its author writes it, with what keeps it from review while it is a draft. */
 export function readDraft(actor: Actor, key: RevisionKey): Promise<DraftView> {
@@ -49,6 +50,7 @@ export function saveDraft(
       .update(revision)
       .set({
         body: kept,
+        schemaVersion: schemaVersionOf(key.kind),
         sha256: fingerprint(kept, ENGINE_VERSION),
         engineVersion: ENGINE_VERSION,
         version: version + 1,
@@ -121,7 +123,7 @@ export function keepDocument(
   const read = readerOf(kind);
   if (!read)
     throw new AppError('conflict', 'Editions of a section table are made by importing the table, not here.');
-  const written = { ...given, slug, schema_version: 1 };
+  const written = { ...given, slug, schema_version: schemaVersionOf(kind) };
   const reading = read(written);
   return reading.ok
     ? { body: reading.body, faults: [] }
@@ -185,7 +187,7 @@ export async function faultsOfDraft(tx: Tx, row: RevisionRow, known?: readonly F
   const faults = known ?? keepDocument(keyOf(row), given).faults;
   const reference = referenceIn(given);
   const isTaken = reference !== null && (await isReferenceTaken(tx, row.practiceId, reference, row.of));
-  return isTaken ? [...faults, referenceTaken(reference)] : [...faults];
+  return [...faults, ...(await referredFaults(tx, row)), ...(isTaken ? [referenceTaken(reference)] : [])];
 }
 
 /** A revision's body as its author writes it. */

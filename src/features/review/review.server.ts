@@ -14,6 +14,7 @@ import { unfinishedOf } from './draft';
 import { isProven, requireProof } from './proof-run.server';
 import { openRecall } from './recall.server';
 import { isReferenceTaken, nameIn, referenceIn, referenceTaken } from './reference.server';
+import { referredFaults } from './referred.server';
 import {
   type ChangeClass,
   type Consequence,
@@ -252,7 +253,7 @@ async function documentFaults(tx: Tx, current: RevisionRow): Promise<Fault[]> {
   const isTaken =
     reference !== null && (await isReferenceTaken(tx, current.practiceId, reference, current.of));
   if (current.of.kind === 'section-table' && unfinishedOf(current.body)) return [ROWS_ARE_WRITTEN];
-  const faults = unfinishedOf(current.body) ? await faultsOf(tx, current) : [];
+  const faults = unfinishedOf(current.body) ? await faultsOf(tx, current) : await referredFaults(tx, current);
   const all = isTaken && faults.length === 0 ? [referenceTaken(reference)] : faults;
   return all.map((fault) => ({ ...fault, pointer: `/document${fault.pointer}` }));
 }

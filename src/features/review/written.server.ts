@@ -1,6 +1,7 @@
 /** From what an author writes to the document that is stored. The server's alone: it loads the expression parser. */
 import type { z } from 'zod';
-import { criteriaDocument } from '@/engine/check';
+import { criteriaOfSet } from '@/engine/check';
+import { combinationSetDocument } from '@/features/combination/combination';
 import { materialSetDocument } from '@/features/material/material';
 import type { Fault } from '@/lib/app-error';
 import { read } from '@/lib/read';
@@ -13,9 +14,13 @@ type Reader = (document: Written) => DocumentReading;
 /** How a document of each kind is read. A section table is not among them: its editions are imported, rows and all. */
 const READERS: Partial<Record<DocumentKind, Reader>> = {
   template: readTemplate,
-  criteria: (document) => bySchema(criteriaDocument, document),
+  criteria: (document) => bySchema(criteriaOfSet, document),
+  'combination-set': (document) => bySchema(combinationSetDocument, document),
   'material-set': (document) => bySchema(materialSetDocument, document),
 };
+
+/** By which a document of a kind is written today. */
+export const schemaVersionOf = (kind: DocumentKind): number => (kind === 'criteria' ? 2 : 1);
 
 export const readerOf = (kind: DocumentKind): Reader | undefined => READERS[kind];
 

@@ -1,4 +1,5 @@
 import { withPractice } from '@/db/tenancy';
+import { resolveCriteria } from '@/engine/check';
 import {
   buildFaultSheet,
   buildSheet,
@@ -44,7 +45,9 @@ export function readSheet(
 }
 
 function blocksOf(row: MemberRow, pins: Pins, job: JobRow, cautions: readonly SheetCaution[]): SheetBlock[] {
-  const { template, criteria } = pins;
+  const { template, criteria, combinations } = pins;
+  const judged =
+    criteria && resolveCriteria(criteria.document, combinations?.document ?? null, row.settings.categories);
   const { result, parameters, settings, purpose } = row;
   const head = {
     purpose,
@@ -66,14 +69,15 @@ function blocksOf(row: MemberRow, pins: Pins, job: JobRow, cautions: readonly Sh
     ownWeight: { acts: settings.self_weight, reason: settings.self_weight_reason },
     patterns: { act: settings.patterns, reason: settings.patterns_reason },
     section: sectionOf(pins),
-    criteria: criteria && {
-      name: criteria.name,
-      revision: criteria.number,
-      basis: criteria.document.strength.basis,
-      combinations: criteria.document.strength.combinations,
-      letters: criteria.document.letters ?? {},
-      patterns: criteria.document.patterns ?? [],
-    },
+    criteria: criteria &&
+      judged && {
+        name: criteria.name,
+        revision: criteria.number,
+        basis: judged.strength.basis,
+        combinations: judged.strength.combinations,
+        letters: judged.letters ?? {},
+        patterns: judged.patterns ?? [],
+      },
     result: { ...result, total: drawnSolution(result.total) },
   });
 }

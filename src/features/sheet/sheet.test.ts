@@ -1,19 +1,16 @@
-import { readFileSync } from 'node:fs';
 import { describe, expect, test } from 'vitest';
-import { criteriaDocument } from '@/engine/check';
 import { derive } from '@/engine/derivation';
 import type { UnitSystemName } from '@/engine/quantity';
 import { materialFor } from '@/engine/section';
 import { buildFaultSheet, buildSheet, type SheetBlock, type SheetInput } from '@/engine/sheet';
+import { shippedCriteria } from '../../../tests/support/criteria';
 import { shippedTemplate } from '../../../tests/support/templates';
 import { evaluateMember } from '../member/evaluate';
 import { drawnSolution, toStoredResult } from '../member/result';
 import { readPaper, shortCode, watermarkOf } from './sheet';
 
 const SLUG = 'propped-cantilever-overhang-uniform';
-const CRITERIA = criteriaDocument.parse(
-  JSON.parse(readFileSync('data/criteria/steel-elastic-en.json', 'utf8')),
-);
+const CRITERIA = shippedCriteria('steel-elastic-en');
 const S355 = materialFor('s355');
 /** IPE 270 of EN 10365, its dimensions; moments from the shipped table. */
 const IPE_270 = {

@@ -1,15 +1,9 @@
 import { describe, expect, test } from 'vitest';
-import { type Criteria, criteriaDocument } from '@/engine/check';
+import type { Criteria } from '@/engine/check';
 import type { Template } from '@/engine/template';
 import { parseExpression } from '@/engine/template/parse';
-import {
-  demoPage,
-  MEMBERS,
-  type MemberGiven,
-  pageOf,
-  readJson,
-  sectionOf,
-} from '../../../tests/support/member-page';
+import { shippedCriteria } from '../../../tests/support/criteria';
+import { demoPage, MEMBERS, type MemberGiven, pageOf, sectionOf } from '../../../tests/support/member-page';
 import { shippedTemplate } from '../../../tests/support/templates';
 import { type Asked, wrongIn } from '../../../tests/support/traced';
 
@@ -100,7 +94,7 @@ function onSupports(slug: string, supports: readonly (readonly [at: string, kv?:
 }
 
 const IPE = { designation: 'IPE 270', table: 'european-i', material: 's355' };
-const CRITERIA = criteriaDocument.parse(readJson('data/criteria/steel-elastic-en.json'));
+const CRITERIA = shippedCriteria('steel-elastic-en');
 const STRICT: Criteria = {
   ...CRITERIA,
   deflection: CRITERIA.deflection.map((limit, index) => ({

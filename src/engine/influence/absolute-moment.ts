@@ -1,8 +1,9 @@
 import type { Proof } from '../beam/index';
 import type { Beam, Redundant, Support } from '../model/index';
 import { extremes, type Piecewise, piecewise } from '../polynomial/index';
-import { influenceLine } from './line';
+import { provenLine } from './line';
 import { coefficientsAbout, distinct } from './pieces';
+import { type SolveMoved, solveWide } from './solver';
 import {
   type Direction,
   frontBreaks,
@@ -40,10 +41,11 @@ export function absoluteMoment(
   wheels: readonly Wheel[],
   directions: readonly Direction[],
   redundants?: readonly Redundant[],
+  solve: SolveMoved = solveWide,
 ): { max: AbsoluteMoment; min: AbsoluteMoment; proof: Proof } {
   const proofs: Proof[] = [];
   const joints = jointsOf(beam, (quantity) => {
-    const { line, proof } = influenceLine(beam, quantity, redundants);
+    const { line, proof } = provenLine(beam, quantity, redundants, solve);
     proofs.push(proof);
     return line;
   });
@@ -167,9 +169,9 @@ function momentUnder(
 }
 
 /** Adds a · (c + d s). */
-function addProduct(sum: number[], a: readonly number[], c: number, d: number): void {
-  a.forEach((value, j) => {
-    sum[j]! += c * value;
-    sum[j + 1]! += d * value;
-  });
+function addProduct(sum: number[], a: ArrayLike<number>, c: number, d: number): void {
+  for (let j = 0; j < a.length; j++) {
+    sum[j]! += c * a[j]!;
+    sum[j + 1]! += d * a[j]!;
+  }
 }

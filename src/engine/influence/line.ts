@@ -1,4 +1,4 @@
-import { solveBeam, spansOf } from '../beam/index';
+import { spansOf } from '../beam/index';
 import type { Beam, Redundant } from '../model/index';
 import {
   add,
@@ -6,14 +6,13 @@ import {
   evaluatePiece,
   extremes,
   integrate,
-  magnitude,
   type Piecewise,
   pieceCount,
   piecewise,
   signChanges,
 } from '../polynomial/index';
-import { proveSolution } from '../proof/index';
 import { dislocated } from './dislocation';
+import { type SolveMoved, solveWide } from './solver';
 import type { InfluenceLine, InfluenceQuantity, SpanArea } from './types';
 
 /** A piece that stays below this part of the largest ordinate is zero: all that is there is rounding. */
@@ -22,8 +21,7 @@ const NOTHING = 1e-13;
 const CUBIC = 4;
 
 /**
- * The influence line by the force method, proven by the direct stiffness method. Fails as `solveBeam` and
- * `proveSolution` do.
+ * The influence line by the force method, proven by the direct stiffness method. Fails as `solve` does.
  *
  * Between its points an unloaded beam has a straight moment, so that v is a cubic there, with shear flexibility too:
  * the line is exact. The beam's own loads and movements have no part in it.
@@ -32,18 +30,23 @@ export function influenceLine(
   beam: Beam,
   quantity: InfluenceQuantity,
   redundants?: readonly Redundant[],
+  solve: SolveMoved = solveWide,
 ): InfluenceLine {
+  const { line, proof } = provenLine(beam, quantity, redundants, solve);
+  return { quantity, line, extremes: extremes(line), areas: areasUnder(beam, line), proof };
+}
+
+/** The line alone. */
+export function provenLine(
+  beam: Beam,
+  quantity: InfluenceQuantity,
+  redundants: readonly Redundant[] | undefined,
+  solve: SolveMoved,
+): Pick<InfluenceLine, 'line' | 'proof'> {
   const { beam: moved, rigid, sense } = dislocated(beam, quantity);
-  const solution = solveBeam(moved, redundants);
-  const { deflection } = solution.diagrams;
+  const { deflection, proof } = solve(moved, redundants);
   const line = cubicOf(rigid ? add(deflection, rigid) : deflection, isZero(beam, quantity) ? 0 : sense);
-  return {
-    quantity,
-    line,
-    extremes: extremes(line),
-    areas: areasUnder(beam, line),
-    proof: proveSolution(moved, solution),
-  };
+  return { line, proof };
 }
 
 /** A hinge passes no moment, whatever stands where. */
@@ -52,13 +55,15 @@ const isZero = ({ hinges }: Beam, quantity: InfluenceQuantity): boolean =>
 
 /** `sense` times the curve, of which only the powers up to the third are not zero. */
 function cubicOf(curve: Piecewise, sense: number): Piecewise {
-  const nothing = NOTHING * magnitude(curve);
-  const pieces = Array.from({ length: pieceCount(curve) }, (_, k) => {
+  const sizes = Array.from({ length: pieceCount(curve) }, (_, k) => {
     const h = curve.breaks[k + 1]! - curve.breaks[k]!;
-    const samples = [0, 1 / 3, 2 / 3, 1].map((t) => Math.abs(evaluatePiece(curve, k, t * h)));
+    return Math.max(...[0, 1 / 3, 2 / 3, 1].map((t) => Math.abs(evaluatePiece(curve, k, t * h))));
+  });
+  const nothing = NOTHING * Math.max(...sizes);
+  const pieces = sizes.map((size, k) => {
     const first = k * (curve.degree + 1);
     const coefficients = curve.coefficients.subarray(first, first + CUBIC);
-    return Math.max(...samples) <= nothing ? [0] : Array.from(coefficients, (c) => sense * c + 0);
+    return size <= nothing ? [0] : Array.from(coefficients, (c) => sense * c + 0);
   });
   return piecewise(curve.breaks, pieces);
 }
@@ -66,10 +71,14 @@ function cubicOf(curve: Piecewise, sense: number): Piecewise {
 /** The areas under a line, span by span, what lies above the axis apart from what lies below it. */
 function areasUnder(beam: Beam, line: Piecewise): SpanArea[] {
   const integral = integrate(line);
-  const crossings = [...line.breaks, ...signChanges(line)];
+  const crossings = [...line.breaks, ...signChanges(line)].sort((a, b) => a - b);
+  let next = 0;
   return spansOf(beam).map(({ from, to }) => {
-    const inside = crossings.filter((x) => from < x && x < to);
-    const cuts = [...new Set([from, ...inside, to])].sort((a, b) => a - b);
+    const cuts = [from];
+    for (; next < crossings.length && crossings[next]! <= to; next++) {
+      if (crossings[next]! > cuts.at(-1)!) cuts.push(crossings[next]!);
+    }
+    if (to > cuts.at(-1)!) cuts.push(to);
     const areas = cuts.slice(1).map((x, k) => evaluate(integral, x)[0] - evaluate(integral, cuts[k]!)[1]);
     const sum = (sign: 1 | -1) =>
       areas.reduce((total, area) => total + (Math.sign(area) === sign ? area : 0), 0);

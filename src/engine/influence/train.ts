@@ -1,5 +1,5 @@
-import { evaluate, extremes, type Piecewise, piecewise } from '../polynomial/index';
-import { coefficientsAbout, distinct } from './pieces';
+import { evaluate, extremes, type Piecewise, pieceCount } from '../polynomial/index';
+import { breakAt, distinct, readAbout } from './pieces';
 
 /** A wheel: how far behind the front of the train, m, and its downward force, N. */
 export type Wheel = { offset: number; force: number };
@@ -30,15 +30,11 @@ export const placesIn = (wheels: readonly Wheel[], direction: Direction): number
   wheels.map(({ offset }) => (direction === 'right' ? -offset : offset));
 
 /** Where each wheel stands with the front at a place, brought to a break of the line that it meets; null off the beam. */
-export function standingAt(
-  { breaks }: Piecewise,
-  places: readonly number[],
-  front: number,
-): (number | null)[] {
+export function standingAt(line: Piecewise, places: readonly number[], front: number): (number | null)[] {
+  const { breaks } = line;
   const [start, end] = [breaks[0]!, breaks.at(-1)!];
   return places.map((place) => {
-    const x = front + place;
-    const at = breaks.find((point) => Math.abs(point - x) <= COINCIDENT * (end - start)) ?? x;
+    const at = breakAt(line, front + place, COINCIDENT * (end - start));
     return start <= at && at <= end ? at : null;
   });
 }
@@ -46,10 +42,9 @@ export function standingAt(
 /** Where the front changes what the train does: a wheel comes to a break of the line, or to an end of the beam. */
 export function frontBreaks({ breaks }: Piecewise, places: readonly number[]): number[] {
   const way = breaks.at(-1)! - breaks[0]! + Math.max(...places) - Math.min(...places);
-  return distinct(
-    places.flatMap((place) => Array.from(breaks, (x) => x - place)),
-    COINCIDENT * way,
-  );
+  const fronts: number[] = [];
+  for (const place of places) for (const x of breaks) fronts.push(x - place);
+  return distinct(fronts, COINCIDENT * way);
 }
 
 /**
@@ -58,23 +53,29 @@ export function frontBreaks({ breaks }: Piecewise, places: readonly number[]): n
  */
 export function trainEffect(line: Piecewise, wheels: readonly Wheel[], direction: Direction): Piecewise {
   const places = placesIn(wheels, direction);
-  const breaks = frontBreaks(line, places);
-  const pieces = breaks.slice(1).map((to, k) => {
-    const from = breaks[k]!;
-    const sum = new Array<number>(line.degree + 1).fill(0);
-    wheels.forEach(({ force }, i) => {
-      const middle = (from + to) / 2 + places[i]!;
-      if (!isOn(line, middle)) return;
-      coefficientsAbout(line, middle, from + places[i]!).forEach((c, j) => {
-        sum[j]! += force * c;
-      });
-    });
-    return sum;
+  const breaks = Float64Array.from(frontBreaks(line, places));
+  const { degree } = line;
+  const effect = { breaks, degree, coefficients: new Float64Array((breaks.length - 1) * (degree + 1)) };
+  wheels.forEach(({ force }, i) => {
+    addWheel(effect, line, force, places[i]!);
   });
-  return piecewise(breaks, pieces);
+  return effect;
 }
 
-const isOn = ({ breaks }: Piecewise, x: number): boolean => breaks[0]! <= x && x <= breaks.at(-1)!;
+/** Adds force · η(front + place) where the wheel is on the line. The breaks of the effect are those of the line as well. */
+function addWheel(effect: Piecewise, line: Piecewise, force: number, place: number): void {
+  const { breaks, degree, coefficients } = effect;
+  const moved = new Float64Array(degree + 1);
+  const end = line.breaks.at(-1)!;
+  let piece = 0;
+  for (let k = 0; k + 1 < breaks.length; k++) {
+    const middle = (breaks[k]! + breaks[k + 1]!) / 2 + place;
+    if (middle < line.breaks[0]! || middle > end) continue;
+    while (piece + 1 < pieceCount(line) && line.breaks[piece + 1]! <= middle) piece++;
+    readAbout(line, piece, breaks[k]! + place, moved);
+    for (let j = 0; j <= degree; j++) coefficients[k * (degree + 1) + j]! += force * moved[j]!;
+  }
+}
 
 /**
  * The largest and the smallest effect of the train over all its positions, in the directions it may run. Exact: between
@@ -135,9 +136,12 @@ const worst = <T extends { value: number }>(found: readonly T[], sense: 1 | -1):
 
 /** A wheel that stands where the line jumps may count on either side of it, while another stands at an end of the beam. */
 function jumpMeetings(line: Piecewise, wheels: readonly Wheel[], direction: Direction): Found[] {
-  const jumps = Array.from(line.breaks).filter((x, k, { length }) => {
-    const [left, right] = evaluate(line, x);
-    return k === 0 || k === length - 1 ? left !== 0 : left !== right;
+  const sides = Array.from(line.breaks, (x) => evaluate(line, x));
+  // A smaller one makes no difference that counts; between pieces without a jump there is that of rounding.
+  const nothing = TIE * Math.max(...sides.map(([left, right]) => Math.max(Math.abs(left), Math.abs(right))));
+  const jumps = Array.from(line.breaks).filter((_, k, { length }) => {
+    const [left, right] = sides[k]!;
+    return Math.abs(k === 0 || k === length - 1 ? left : left - right) > nothing;
   });
   return placesIn(wheels, direction).flatMap((place) =>
     jumps.flatMap((x) =>

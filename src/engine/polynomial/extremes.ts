@@ -33,32 +33,69 @@ export function extremes(p: Piecewise): { max: Extreme; min: Extreme } {
   return { max: attained(max), min: attained(min) };
 }
 
-/** Ends and turning points, piece by piece. */
+/** Ends and those turning points that may be extremes, piece by piece. */
 function candidatesOf(p: Piecewise): Candidate[] {
   const derivative = differentiate(p);
-  const pieces = Array.from({ length: pieceCount(p) }, (_, k) => {
-    const [from, to] = [p.breaks[k]!, p.breaks[k + 1]!];
-    const at = (x: number): Candidate => ({ x, value: evaluatePiece(p, k, x - from) });
-    return { left: at(from), turns: rootsOfPiece(derivative, k).map(at), right: at(to) };
+  const candidateAt = (k: number, x: number): Candidate => ({
+    x,
+    value: evaluatePiece(p, k, x - p.breaks[k]!),
   });
-  const largest = largestOf(pieces.flatMap(({ left, turns, right }) => [left, ...turns, right]));
+  const pieces = Array.from({ length: pieceCount(p) }, (_, k) => [
+    candidateAt(k, p.breaks[k]!),
+    candidateAt(k, p.breaks[k + 1]!),
+  ]);
+  const ends = range(pieces.flat());
+  const bounds = new Float64Array(p.degree + 1);
+  pieces.forEach((piece, k) => {
+    if (!mayPass(p, k, ends, bounds)) return;
+    const turns = rootsOfPiece(derivative, k).map((x) => candidateAt(k, x));
+    piece.splice(1, 0, ...turns);
+  });
+  const largest = largestOf(pieces.flat());
   return pieces.flatMap((piece) => distinct(piece, ROUNDING * largest));
+}
+
+/**
+ * Whether piece k may go beyond a range, or come as near to its ends as counts as a tie: by its coefficients in the
+ * basis of Bernstein's polynomials, between which its values lie. They go into `bounds`.
+ */
+function mayPass(
+  { breaks, degree, coefficients }: Piecewise,
+  k: number,
+  { max, min }: { max: number; min: number },
+  bounds: Float64Array,
+): boolean {
+  const length = breaks[k + 1]! - breaks[k]!;
+  let scale = 1; // length to the power of i, divided by the binomial coefficient
+  for (let i = 0; i <= degree; i++) {
+    bounds[i] = coefficients[k * (degree + 1) + i]! * scale;
+    scale *= (length * (i + 1)) / (degree - i);
+  }
+  for (let r = 1; r <= degree; r++) {
+    for (let j = degree; j >= r; j--) bounds[j]! += bounds[j - 1]!;
+  }
+  const tie = TIE * Math.max(Math.abs(max), Math.abs(min));
+  let reaches = false;
+  for (let j = 1; j < degree; j++) {
+    // !(<) also of what is not a number
+    reaches ||= !(bounds[j]! < max - tie) || !(bounds[j]! > min + tie);
+  }
+  return reaches;
 }
 
 /**
  * The ends, and the turning points that differ from what is beside them. A piece that levels out towards its end has
  * a multiple root of p' there, which rounding moves: by 1e-8 of the piece where it is double, by 1e-5 where triple.
  */
-function distinct(
-  { left, turns, right }: { left: Candidate; turns: Candidate[]; right: Candidate },
-  rounding: number,
-): Candidate[] {
-  const kept = [left];
-  for (const turn of turns) {
-    if (Math.abs(turn.value - kept.at(-1)!.value) > rounding) kept.push(turn);
+function distinct(piece: readonly Candidate[], rounding: number): Candidate[] {
+  const kept = [piece[0]!];
+  const right = piece.at(-1)!;
+  for (let i = 1; i < piece.length - 1; i++) {
+    if (Math.abs(piece[i]!.value - kept.at(-1)!.value) > rounding) kept.push(piece[i]!);
   }
   while (kept.length > 1 && Math.abs(kept.at(-1)!.value - right.value) <= rounding) kept.pop();
-  return [...kept, right];
+  kept.push(right);
+  return kept;
 }
 
 function range(candidates: readonly Candidate[]): { max: number; min: number } {

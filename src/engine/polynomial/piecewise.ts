@@ -110,8 +110,10 @@ function mapPieces(p: Piecewise, map: (coefficients: number[], length: number) =
   return piecewise(p.breaks, pieces);
 }
 
-function coefficientsOf(p: Piecewise, k: number): number[] {
-  return Array.from(p.coefficients.subarray(k * (p.degree + 1), (k + 1) * (p.degree + 1)));
+function coefficientsOf({ degree, coefficients }: Piecewise, k: number): number[] {
+  const a: number[] = [];
+  for (let j = 0; j <= degree; j++) a.push(coefficients[k * (degree + 1) + j]!);
+  return a;
 }
 
 function combine(p: Piecewise, q: Piecewise, join: (a: number[], b: number[]) => number[]): Piecewise {

@@ -1,8 +1,11 @@
-import type { Proof, Reaction, Solution } from '../beam/index';
+import type { Diagrams, Proof, Reaction } from '../beam/index';
 import type { Beam, Restraint } from '../model/index';
 import { evaluate, type Piecewise } from '../polynomial/index';
 import { pointsOf, type State, type StiffnessPiece, solveStiffness } from '../stiffness/index';
 import { magnitude, relative, type Scales, scalesOf } from './scale';
+
+/** What there is to prove. */
+type Solved = { diagrams: Diagrams; reactions: readonly Reaction[] };
 
 /** Below this part of the length between two points, doubles leave the force method six digits instead of nine. */
 const SHORT = 1e-4;
@@ -30,7 +33,7 @@ export function isProven(proof: Proof, beam: Beam): boolean {
  *
  * ψ = θ + V/GA is the section's rotation. Fails with SingularStiffness where the beam is a mechanism.
  */
-export function proveSolution(beam: Beam, solution: Solution): Proof {
+export function proveSolution(beam: Beam, solution: Solved): Proof {
   const check = solveStiffness(beam);
   const scales = scalesOf(beam, solution.reactions, check);
   return {
@@ -71,7 +74,7 @@ function actionsOf(beam: Beam, reactions: readonly Reaction[]): Action[] {
   return actions;
 }
 
-function equilibriumOf(beam: Beam, solution: Solution, scales: Scales): number {
+function equilibriumOf(beam: Beam, solution: Solved, scales: Scales): number {
   const actions = actionsOf(beam, solution.reactions);
   const force = actions.reduce((total, action) => total + action.force, 0);
   const aboutEnds = [0, beam.length].map((x) => {
@@ -85,7 +88,7 @@ function equilibriumOf(beam: Beam, solution: Solution, scales: Scales): number {
   return magnitude([relative(force, scales.force), ...aboutEnds, ...inHinges]);
 }
 
-function compatibilityOf(beam: Beam, { diagrams, reactions }: Solution, scales: Scales): number {
+function compatibilityOf(beam: Beam, { diagrams, reactions }: Solved, scales: Scales): number {
   const residuals = beam.supports.flatMap((support, k) => {
     const reaction = reactions[k]!;
     return SIDES.flatMap((side) => {
@@ -114,7 +117,7 @@ function segmentAt(beam: Beam, x: number, side: Side) {
   return side === 'left' ? beside[0]! : beside.at(-1)!;
 }
 
-function pieceDifference(piece: StiffnessPiece, { diagrams }: Solution, scales: Scales): number {
+function pieceDifference(piece: StiffnessPiece, { diagrams }: Solved, scales: Scales): number {
   const middle = piece.from + (piece.to - piece.from) / 2;
   const places: [State, number, Side][] = [
     [piece.left, piece.from, 'right'],

@@ -183,17 +183,33 @@ describe('answerMovingLoad', () => {
     expect(errorsOf(answerMovingLoad({ ...plain, wheels, quantity: moment, ...changes }))).toEqual(expected);
   });
 
-  test('refuses more work than a request may be, and says how much it may be', () => {
-    const supports = Array.from({ length: 100 }, (_, i) => ({ at: i, kind: 'pin' }));
-    const outcome = answerMovingLoad({
-      length: 99,
-      ei: 1e7,
-      supports,
-      wheels: Array(10).fill({ offset: 0, force: 1 }),
-    });
-    expect(outcome).toMatchObject({
-      errors: [{ pointer: '/wheels', message: expect.stringContaining('at most 4 wheels') }],
-    });
+  const rollers = (count: number) => ({
+    length: 6 * (count - 1),
+    ei: 1e7,
+    supports: Array.from({ length: count }, (_, i) => ({ at: 6 * i, kind: 'pin' })),
+    horizontal: 'ignore',
+  });
+  const train = (count: number) => Array.from({ length: count }, (_, i) => ({ offset: i, force: 1e4 }));
+
+  test.each<[string, number, number, string]>([
+    ['too many wheels for the supports', 100, 10, 'at most 5 wheels'],
+    ['a single wheel on too many supports', 400, 1, 'takes too long. Ask for one section'],
+  ])(
+    'refuses %s where the absolute moment is asked for, and says what is possible',
+    (_, count, wheelCount, words) => {
+      expect(answerMovingLoad({ ...rollers(count), wheels: train(wheelCount) })).toMatchObject({
+        errors: [{ pointer: '/wheels', message: expect.stringContaining(words) }],
+      });
+    },
+  );
+
+  test('refuses hundreds of supports with hinges, and takes as many without', () => {
+    const asked = { ...rollers(400), wheels: train(1), quantity: { kind: 'moment', at: 1197 } };
+    expect(errorsOf(answerMovingLoad({ ...asked, hinges: [3] }))).toEqual(['/supports out_of_range']);
+    // A force in the middle of one of many equal spans. By the three-moment equation, with the moments over the further
+    // supports falling by 2 − √3 from one to the next, (−(2 − √3) + 4 + 1) M = −3/8 P L; in the middle P L/4 + M.
+    const { value } = answerOf(answerMovingLoad(asked)).worst!.max;
+    expect(value / (1e4 * 6)).toBeCloseTo(0.25 - 0.375 / (3 + Math.sqrt(3)), 10);
   });
 });
 

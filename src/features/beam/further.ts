@@ -8,6 +8,7 @@ import {
   influenceLine,
   readInfluenceQuantity,
   readWheels,
+  type SolveMoved,
   type TrainExtreme,
   type Wheel,
   worstTrain,
@@ -37,11 +38,15 @@ export function readWithRedundants(document: BeamDocument): Reading<ReadBeam> {
 }
 
 /** The influence line of a quantity; faults of what was asked for are at `quantity`. */
-export function solveInfluence({ beam, redundants }: ReadBeam, asked: AskedQuantity): Reading<InfluenceLine> {
+export function solveInfluence(
+  { beam, redundants }: ReadBeam,
+  asked: AskedQuantity,
+  solve?: SolveMoved,
+): Reading<InfluenceLine> {
   const quantity = readInfluenceQuantity(beam, asked);
   if (!quantity.ok) return { ok: false, faults: within('quantity', quantity.faults) };
   return attempt({ beam, redundants }, () => {
-    const line = influenceLine(beam, quantity.value, redundants);
+    const line = influenceLine(beam, quantity.value, redundants, solve);
     return isProven(line.proof, beam) ? { ok: true, value: line } : unproven('Its proof is off by too much.');
   });
 }
@@ -54,9 +59,14 @@ export type Train = {
 export type TrainOnLine = { influence: InfluenceLine; max: TrainExtreme; min: TrainExtreme };
 
 /** The worst positions of a train for one quantity; faults are at `wheels` and `quantity`. */
-export function solveTrain(read: ReadBeam, asked: AskedQuantity, train: Train): Reading<TrainOnLine> {
+export function solveTrain(
+  read: ReadBeam,
+  asked: AskedQuantity,
+  train: Train,
+  solve?: SolveMoved,
+): Reading<TrainOnLine> {
   const wheels = readWheels(train.wheels);
-  const influence = solveInfluence(read, asked);
+  const influence = solveInfluence(read, asked, solve);
   if (!wheels.ok || !influence.ok) {
     return { ok: false, faults: [...wheelFaults(wheels), ...(influence.ok ? [] : influence.faults)] };
   }
@@ -66,23 +76,36 @@ export function solveTrain(read: ReadBeam, asked: AskedQuantity, train: Train): 
 
 export type AbsoluteMoments = { max: AbsoluteMoment; min: AbsoluteMoment };
 
-/** Joints of the beam, times its points, times the wheels squared, that one request may ask for: seconds of work. */
-const MOST_WORK = 200_000;
+/** Influence lines of the moments at joints, times the points of the beam, times SOLVING and the wheels squared: a second. */
+const MOST_WORK = 330_000;
+/** What it takes to solve a line, beside the pairs of wheels on it. */
+const SOLVING = 2;
+
+/** How many influence lines the absolute moment is found from: one for a joint, two where it holds rotation. */
+export const jointLines = ({ supports }: Beam): number =>
+  supports.reduce((count, { rotation }) => count + (rotation.kind === 'free' ? 1 : 2), 2);
 
 /** The largest and smallest moment of a train at any section in any position; faults are at `wheels`. */
-export function solveAbsoluteMoment(read: ReadBeam, train: Train): Reading<AbsoluteMoments> {
+export function solveAbsoluteMoment(
+  read: ReadBeam,
+  train: Train,
+  solve?: SolveMoved,
+): Reading<AbsoluteMoments> {
   const { beam, redundants } = read;
   const wheels = readWheels(train.wheels);
   if (!wheels.ok) return { ok: false, faults: wheelFaults(wheels) };
-  const joints = beam.supports.length + 2;
-  const points = joints + beam.hinges.length + beam.segments.length;
-  if (joints * points * wheels.value.length ** 2 > MOST_WORK) {
-    const most = Math.max(1, Math.floor(Math.sqrt(MOST_WORK / (joints * points))));
-    const message = `The absolute moment of a beam with so many supports takes at most ${most} wheels. Leave some out, or ask for one section.`;
+  const lines = jointLines(beam);
+  const work = lines * (beam.supports.length + beam.hinges.length + beam.segments.length + 2);
+  const most = Math.floor(Math.sqrt(Math.max(0, MOST_WORK / work - SOLVING)));
+  if (wheels.value.length > most) {
+    const message =
+      most < 1
+        ? 'The absolute moment of a beam with so many supports takes too long. Ask for one section.'
+        : `The absolute moment of a beam with so many supports takes at most ${most} wheels. Leave some out, or ask for one section.`;
     return { ok: false, faults: [{ path: ['wheels'], code: 'out_of_range', message }] };
   }
   return attempt(read, () => {
-    const { max, min, proof } = absoluteMoment(beam, wheels.value, train.directions, redundants);
+    const { max, min, proof } = absoluteMoment(beam, wheels.value, train.directions, redundants, solve);
     return isProven(proof, beam)
       ? { ok: true, value: { max, min } }
       : unproven('Its proof is off by too much.');

@@ -2,11 +2,12 @@ import { z } from 'zod';
 import { stationPositions } from '@/engine/beam/index';
 import type { InfluenceLine, InfluenceQuantity } from '@/engine/influence/index';
 import { type BeamDocument, COINCIDENT } from '@/engine/model/index';
-import { evaluate, magnitude, type Piecewise, pieceCount, settle } from '@/engine/polynomial/index';
+import { evaluate, magnitude, type Piecewise, pieceAt, pieceCount, settle } from '@/engine/polynomial/index';
 import { read } from '@/lib/read';
 import { solveAnswer } from './answer';
 import { readWithRedundants, solveInfluence } from './further';
 import { type Outcome, quantityAnswer, quantityRequest, toOutcome } from './further-answer';
+import { lineSolver } from './line-solver';
 import { solveRequest } from './request';
 
 /** The body of POST /api/v1/beams/influence: the beam of beams/solve, whose loads have no part in it, and a quantity. */
@@ -46,7 +47,9 @@ export function answerInfluence(body: unknown): Outcome<InfluenceAnswer> {
 /** The same of a body that its schema has read. */
 export function influenceDocument({ quantity, ...document }: InfluenceRequest): Outcome<InfluenceAnswer> {
   const beam = readWithRedundants(document);
-  const line = beam.ok ? solveInfluence(beam.value, quantity) : beam;
+  if (!beam.ok) return toOutcome(beam);
+  const solve = lineSolver(beam.value.beam);
+  const line = solve.ok ? solveInfluence(beam.value, quantity, solve.value) : solve;
   return toOutcome(line.ok ? { ok: true, value: toAnswer(document, line.value) } : line);
 }
 
@@ -57,7 +60,7 @@ function toAnswer(document: BeamDocument, influence: InfluenceLine): InfluenceAn
     unit: unitOf(quantity),
     breaks: [...line.breaks],
     coefficients: Array.from({ length: pieceCount(line) }, (_, k) => cubic(line, k)),
-    stations: stationPositions(document, document.stations).map((x) => ({ x, value: ordinates(line, x) })),
+    stations: ordinates(line, stationPositions(document, document.stations)),
     extremes: found,
     areas,
     proof: proven,
@@ -75,11 +78,15 @@ function cubic({ degree, coefficients }: Piecewise, k: number): number[] {
   return [0, 1, 2, 3].map((j) => (j <= degree ? coefficients[first + j]! : 0));
 }
 
-/** [just left, just right]; positions within 1e-12 of the length of a break coincide with it. */
-function ordinates(line: Piecewise, x: number): [number, number] {
-  const nearness = COINCIDENT * (line.breaks.at(-1)! - line.breaks[0]!);
-  const place = line.breaks.find((at) => Math.abs(at - x) <= nearness) ?? x;
+/** Positions within 1e-12 of the length of a break coincide with it. */
+function ordinates(line: Piecewise, positions: readonly number[]): InfluenceAnswer['stations'] {
+  const { breaks } = line;
+  const nearness = COINCIDENT * (breaks.at(-1)! - breaks[0]!);
   const largest = magnitude(line);
-  const [left, right] = evaluate(line, place);
-  return [settle(left, largest), settle(right, largest)];
+  return positions.map((x) => {
+    const k = pieceAt(line, x);
+    const place = [breaks[k]!, breaks[k + 1]!].find((at) => Math.abs(at - x) <= nearness) ?? x;
+    const [left, right] = evaluate(line, place);
+    return { x, value: [settle(left, largest), settle(right, largest)] };
+  });
 }

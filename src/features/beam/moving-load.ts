@@ -3,6 +3,7 @@ import type { Direction } from '@/engine/influence/index';
 import type { Reading } from '@/engine/model/index';
 import { read } from '@/lib/read';
 import {
+  jointLines,
   type ReadBeam,
   readWithRedundants,
   solveAbsoluteMoment,
@@ -10,6 +11,7 @@ import {
   type TrainOnLine,
 } from './further';
 import { type Outcome, quantityAnswer, quantityRequest, toOutcome } from './further-answer';
+import { lineSolver } from './line-solver';
 import { position, quantity, solveRequest } from './request';
 
 const MOST_WHEELS = 40;
@@ -79,9 +81,12 @@ export function movingLoadDocument(request: MovingLoadRequest): Outcome<MovingLo
 
   function work(given: ReadBeam): Reading<MovingLoadAnswer> {
     const train = { wheels, directions: DIRECTIONS[way ?? 'both'] };
-    const onLine = asked ? solveTrain(given, asked, train) : undefined;
+    const isAnyway = absolute || !asked;
+    const solve = lineSolver(given.beam, isAnyway ? jointLines(given.beam) : 1);
+    if (!solve.ok) return solve;
+    const onLine = asked ? solveTrain(given, asked, train, solve.value) : undefined;
     if (onLine && !onLine.ok) return onLine;
-    const anyway = absolute || !asked ? solveAbsoluteMoment(given, train) : undefined;
+    const anyway = isAnyway ? solveAbsoluteMoment(given, train, solve.value) : undefined;
     if (anyway && !anyway.ok) return anyway;
     return {
       ok: true,

@@ -76,7 +76,12 @@ function toRequest(
   if (from) sent.set('origin', from);
   if (json !== undefined) sent.set('content-type', 'application/json');
   const content = json === undefined ? body : JSON.stringify(json);
-  return new Request(url, { method, headers: sent, ...(content !== undefined && { body: content }) });
+  return new Request(url, {
+    method,
+    headers: sent,
+    // A stream is sent as it comes.
+    ...(content !== undefined && { body: content, duplex: 'half' as const }),
+  });
 }
 
 /** Signs in over the interface and gives the cookie to send from then on. */

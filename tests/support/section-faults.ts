@@ -257,7 +257,7 @@ const KINDS: readonly Kind[] = [
       }),
       rule(36, 'two sections whose names read the same', (file) => {
         const name = cellAt(file.table, file.row, 'designation');
-        setCell(file.table, file.row + 3, 'designation', name.replaceAll('x', ' × '));
+        setCell(file.table, file.row + 3, 'designation', name.replace('OV', 'ov '));
         return at(file, ['key_clash'], lineOf(file.row + 3));
       }),
       rule(

@@ -201,6 +201,7 @@ const CUT_FIGURES = 3; // "1.2E+03": what a narrow spreadsheet column leaves
 
 function readScientific(mantissa: string, exponent: number, scale: number, mark: DecimalMark) {
   const value = readDigits(mantissa, scale * 10 ** exponent, mark);
+  if (typeof value === 'number' && value / scale > LARGEST) return readDigits(`${LARGEST}0`, scale, mark);
   if (typeof value !== 'number') return value;
   if (exponent < CUT_FIGURES || mantissa.replaceAll(/\D/g, '').length > CUT_FIGURES) return value;
   const message =

@@ -98,9 +98,9 @@ function isBinary(head: Uint8Array): boolean {
 }
 
 /** UTF-8 up to the last whole character of what was cut off. */
-function isUtf8(head: Uint8Array): boolean {
+function isUtf8(head: Uint8Array, isWhole: boolean): boolean {
   let end = head.length;
-  for (let back = 1; back <= 3 && back <= head.length; back++) {
+  for (let back = 1; !isWhole && back <= 3 && back <= head.length; back++) {
     if (((head[head.length - back] ?? 0) & 0xc0) === 0xc0) {
       end = head.length - back;
       break;
@@ -118,7 +118,7 @@ function isUtf8(head: Uint8Array): boolean {
 const ONE_BYTE: Encoding[] = ['windows-1252', 'windows-1251', 'iso-8859-2', 'macintosh'];
 
 /** Encoding by byte order mark or because it is UTF-8; what is neither has to be asked. */
-export function encodingOf(head: Uint8Array): EncodingReading {
+export function encodingOf(head: Uint8Array, isWhole: boolean): EncodingReading {
   if (startsWith(head, [0xef, 0xbb, 0xbf])) return { kind: 'known', encoding: 'utf-8', bom: true };
   if (startsWith(head, [0xff, 0xfe])) return { kind: 'known', encoding: 'utf-16le', bom: true };
   if (startsWith(head, [0xfe, 0xff])) return { kind: 'known', encoding: 'utf-16be', bom: true };
@@ -127,7 +127,7 @@ export function encodingOf(head: Uint8Array): EncodingReading {
   if (isBinary(head)) {
     return { kind: 'refused', refusal: refuse('binary', 'This is no text. Give the table as CSV.') };
   }
-  if (isUtf8(head)) return { kind: 'known', encoding: 'utf-8', bom: false };
+  if (isUtf8(head, isWhole)) return { kind: 'known', encoding: 'utf-8', bom: false };
   return { kind: 'open', choices: [...ONE_BYTE, 'utf-8'] };
 }
 

@@ -55,13 +55,14 @@ function delimiterOf(text: string): { delimiter: Delimiter; isNamed: boolean } {
 
 const isBlank = ({ cells }: FileLine) => cells.every((cell) => cellText(cell) === '');
 
+/** The lines of the head, and why what follows the last whole one cannot be a row. */
 function readLines(head: Uint8Array, encoding: Encoding, delimiter: Delimiter, isWhole: boolean) {
   const reader = new LineReader({ encoding, delimiter });
-  const lines = reader.push(head);
-  if ('code' in lines) return lines;
-  if (!isWhole) return lines;
-  const last = reader.finish();
-  return 'code' in last ? last : [...lines, ...last];
+  const first = reader.push(head);
+  const last = isWhole && !('code' in first) ? reader.finish() : [];
+  if ('code' in first) return { lines: [], unfinished: first };
+  if ('code' in last) return { lines: [], unfinished: last };
+  return { lines: [...first, ...last], unfinished: isWhole ? null : reader.unfinished() };
 }
 
 /** The line with the most known headings; the first filled one where none has any. */
@@ -144,18 +145,20 @@ export function recognise(head: Uint8Array, file: RecognisedFile): Recognition {
   if (file.size > MOST_BYTES) return refused('too_large', 'The file is larger than 50 MB. Split it.');
   const refusal = refusalOf(head);
   if (refusal) return { ok: false, refusal };
-  const read = encodingOf(head);
+  const isWhole = head.length >= file.size;
+  const read = encodingOf(head, isWhole);
   if (read.kind === 'refused') return { ok: false, refusal: read.refusal };
   const choices = read.kind === 'open' ? read.choices : [];
   const encoding = file.encoding ?? (read.kind === 'known' ? read.encoding : (choices[0] ?? 'utf-8'));
 
   const { delimiter, isNamed } = delimiterOf(new TextDecoder(encoding).decode(head));
-  const lines = readLines(head, encoding, delimiter, head.length >= file.size);
-  if ('code' in lines) return { ok: false, refusal: lines };
+  const { lines, unfinished } = readLines(head, encoding, delimiter, isWhole);
+  if (lines.length === 0 && unfinished)
+    return tooWide(head, encoding, delimiter) ?? { ok: false, refusal: unfinished };
   const at = headingAt(lines, isNamed);
   const heading = lines[at];
-  const unfit = unfitness(heading, head.length >= file.size);
-  if (!heading || unfit) return unfit ?? refused('empty', 'The file has nothing but blank lines.');
+  const unfit = unfitness(heading);
+  if (!heading || unfit) return unfit ?? refused('empty', 'The file has no headings.');
 
   const units = isUnitLine(lines[at + 1]?.cells ?? []) ? (lines[at + 1] ?? null) : null;
   const columns = readColumns(heading.cells, units?.cells ?? null);
@@ -164,6 +167,7 @@ export function recognise(head: Uint8Array, file: RecognisedFile): Recognition {
     .filter((line) => !isBlank(line))
     .slice(0, ROWS_READ);
   if (rows.length === 0) {
+    if (unfinished) return { ok: false, refusal: unfinished };
     return refused('no_rows', 'The file has headings and no rows. Give at least one section.');
   }
   const cells = rows.flatMap((row) => columns.filter(isNumeric).map(({ index }) => row.cells[index] ?? ''));
@@ -202,12 +206,18 @@ export function recognise(head: Uint8Array, file: RecognisedFile): Recognition {
 const isNumeric = ({ field, byAxes }: Read) =>
   byAxes !== undefined || (field !== null && !['designation', 'shape', 'computed'].includes(field));
 
+/** A first line that is longer than the head for its many columns. */
+function tooWide(head: Uint8Array, encoding: Encoding, delimiter: Delimiter): Recognition | null {
+  const columns = new TextDecoder(encoding).decode(head).split(delimiter).length;
+  if (columns <= MOST_COLUMNS) return null;
+  const message = `The file has more than ${columns} columns; ${MOST_COLUMNS} is the most. Leave out what is no property.`;
+  return refused('too_many_columns', message);
+}
+
 /** Why a line cannot head a table. */
-function unfitness(heading: FileLine | undefined, isWhole: boolean): Recognition | null {
-  if (!heading) {
-    if (isWhole) return refused('empty', 'The file has nothing but blank lines.');
-    return refused('cell_too_long', 'The first 64 KB hold no whole line. This is no table of sections.');
-  }
+function unfitness(heading: FileLine | undefined): Recognition | null {
+  if (!heading)
+    return refused('empty', 'The file has nothing but blank lines where its headings should stand.');
   const { cells } = heading;
   if (cells.length > MOST_COLUMNS) {
     const message = `The file has ${cells.length} columns; ${MOST_COLUMNS} is the most. Leave out what is no property.`;

@@ -1,7 +1,7 @@
 import Papa from 'papaparse';
 import type { Delimiter, Encoding, Refusal } from './contract';
 
-/** A line of the file: its number from 1, and its cells. One with a quoted line break is several lines long. */
+/** A line of the file: its number from 1, and its cells. One with a quoted line break is several lines long; an empty one is none. */
 export type FileLine = { number: number; cells: string[] };
 
 const LONGEST_ROW = 1_000_000; // characters: an open quote would else swallow the file
@@ -32,6 +32,14 @@ export class LineReader {
     return this.read(last, true);
   }
 
+  /** Why what is left over cannot be the start of a row that fits. */
+  unfinished(): Refusal | null {
+    if (this.rest === '') return null;
+    if (this.rest.includes('"')) return this.unclosed(this.rest, this.number);
+    const message = `Line ${this.number} goes on for more than ${this.rest.length} characters. This is no table of sections.`;
+    return { code: 'cell_too_long', message };
+  }
+
   /** CR LF and CR as LF; a CR at the end of a piece may be half of one. */
   private oneLineEnd(text: string): string {
     if (text === '') return text;
@@ -45,14 +53,15 @@ export class LineReader {
     if (input === '') return [];
     const { data, errors, meta } = this.parser.parse(input, 0, !isLast) as Papa.ParseResult<string[]>;
     this.rest = isLast ? '' : input.slice(meta.cursor);
-    const lines = data.map((cells) => this.line(cells));
+    const lines: FileLine[] = [];
+    for (const cells of data) {
+      if (cells.length > 1 || cells[0] !== '') lines.push(this.line(cells));
+      else this.number++;
+    }
     if (isLast && errors.some(({ code }) => code === 'MissingQuotes')) {
       return this.unclosed(lines.at(-1)?.cells.at(-1) ?? '', lines.at(-1)?.number ?? this.number);
     }
-    if (this.rest.length <= LONGEST_ROW) return lines;
-    if (this.rest.includes('"')) return this.unclosed(this.rest, this.number);
-    const message = `Line ${this.number} is longer than a million characters. This is no table of sections.`;
-    return { code: 'cell_too_long', message };
+    return (this.rest.length > LONGEST_ROW ? this.unfinished() : null) ?? lines;
   }
 
   private line(cells: string[]): FileLine {

@@ -398,6 +398,33 @@ describe('a recall', () => {
     expect(await ids('&state=closed', 'reader')).not.toContain(step.recall);
   });
 
+  test('gives its uses in pages, the reader’s own first', async () => {
+    const slug = await opened(['P1', 'P2', 'P3']);
+    await place('colleague', 'OPEN', 'P0', slug);
+    const { json: step } = await withdraw('librarian', slug, 2);
+    const page = (query: string, by: Name = 'engineer') =>
+      ask('GET', `/api/v1/recalls/${step.recall}?limit=2${query}`, { token: tokens[by] });
+    const first = (await page('')).json;
+    const second = (await page(`&cursor=${first.next}`)).json;
+    const marks = [...first.items, ...second.items].map(({ mark }: { mark: string }) => mark);
+    expect([first.items.length, first.uses, second.next]).toEqual([2, 4, null]);
+    expect(marks).toEqual(['P1', 'P2', 'P3', 'P0']);
+    expect(faults(await page('&cursor=none'))).toEqual(['/cursor not_allowed']);
+  });
+
+  test('is listed in pages, the newest first', async () => {
+    const newest: string[] = [];
+    for (const mark of ['PL1', 'PL2']) {
+      const { json } = await withdraw('librarian', await opened([mark]), 2);
+      newest.unshift(json.recall);
+    }
+    const page = (query: string) => ask('GET', `/api/v1/recalls?limit=1${query}`, { token: tokens.reader });
+    const first = (await page('')).json;
+    const second = (await page(`&cursor=${first.next}`)).json;
+    expect([first.items[0].id, second.items[0].id]).toEqual(newest);
+    expect(first.total).toBeGreaterThanOrEqual(2);
+  });
+
   test('of a superseded revision finds who stayed on it', async () => {
     const { slug, ids } = await issued();
     await place('engineer', 'OPEN', 'I1', slug);

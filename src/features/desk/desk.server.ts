@@ -18,7 +18,7 @@ export async function readDesk(actor: Actor, query: DeskQuery) {
     query.kind === undefined || kind === query.kind;
   const [open, recalls, requests, due] = await Promise.all([
     listOpenRevisions(actor, { kind: query.kind }),
-    listRecalls(actor, { state: query.recalls, mine: query.mine }, { from: 0, limit: MOST }),
+    listRecalls(actor, { state: query.recalls, mine: query.mine }, { limit: MOST }),
     listRequests(actor, requestQuery(actor, query), { limit: MOST }),
     listReviewsDue(actor),
   ]);

@@ -8,7 +8,7 @@ import { requirePermission } from '@/features/account/permission';
 import { MEMBER_STATUSES } from '@/features/member/terms';
 import { notFound } from '@/lib/app-error';
 import { namesOf } from './people.server';
-import type { DecidedView, RecallItem, RecallView } from './recall';
+import type { DecidedView, RecallItem, RecallPlace, RecallView } from './recall';
 import type { Consequence, DocumentKind } from './review';
 import type { Actor } from './rows.server';
 import { derivedFrom, membersById, visibleTo } from './uses.server';
@@ -33,6 +33,8 @@ export interface RecallRow {
   readonly severity: Consequence | null;
   readonly openedBy: string;
   readonly openedAt: Date;
+  /** The same, as the list goes on after it. */
+  readonly place: string;
   readonly closedBy: string | null;
   readonly closedAt: Date | null;
   readonly uses: number;
@@ -41,7 +43,12 @@ export interface RecallRow {
   readonly mine: number;
 }
 
-const select = (tx: Tx, { practiceId, personId }: Actor, where: SQL | undefined): Promise<RecallRow[]> =>
+const select = (
+  tx: Tx,
+  { practiceId, personId }: Actor,
+  where: SQL | undefined,
+  limit: number,
+): Promise<RecallRow[]> =>
   tx
     .select({
       id: recall.id,
@@ -55,6 +62,8 @@ const select = (tx: Tx, { practiceId, personId }: Actor, where: SQL | undefined)
       severity: revision.withdrawalSeverity,
       openedBy: opener.name,
       openedAt: recall.openedAt,
+      // The driver's dates end at milliseconds; the place must not.
+      place: sql<string>`${recall.openedAt}::text`,
       closedBy: closer.name,
       closedAt: recall.closedAt,
       uses: countUses(sql`true`),
@@ -71,10 +80,11 @@ const select = (tx: Tx, { practiceId, personId }: Actor, where: SQL | undefined)
     .leftJoin(closer, eq(closer.id, recall.closedById))
     .where(and(eq(recall.practiceId, practiceId), where))
     .orderBy(desc(recall.openedAt), desc(recall.id))
+    .limit(limit)
     .execute();
 
 export async function findRecall(tx: Tx, actor: Actor, id: string): Promise<RecallRow> {
-  const [found] = await select(tx, actor, eq(recall.id, id));
+  const [found] = await select(tx, actor, eq(recall.id, id), 1);
   if (!found) throw notFound('This recall');
   return found;
 }
@@ -102,39 +112,63 @@ interface Narrowing {
   readonly mine: boolean;
 }
 
+interface ListPage {
+  readonly after?: RecallPlace | undefined;
+  readonly limit: number;
+}
+
 /** Recalls, the newest first. */
 export function listRecalls(
   actor: Actor,
   { state, mine }: Narrowing,
-  { from, limit }: { readonly from: number; readonly limit: number },
-): Promise<{ items: RecallItem[]; next: number | null; total: number }> {
+  { after, limit }: ListPage,
+): Promise<{ items: RecallItem[]; next: RecallPlace | null; total: number }> {
   requirePermission(actor, 'library.read');
+  const matching = and(
+    eq(recall.practiceId, actor.practiceId),
+    state === 'open' ? isNull(recall.closedAt) : undefined,
+    state === 'closed' ? isNotNull(recall.closedAt) : undefined,
+    mine
+      ? sql`${countUses(sql`recall_use.decision is null and recall_use.owner_id = ${actor.personId}`)} > 0`
+      : undefined,
+  );
+  const onward =
+    after && sql`(${recall.openedAt}, ${recall.id}) < (${after[0]}::timestamptz, ${after[1]}::uuid)`;
   return withPractice(actor, async (tx) => {
-    const rows = await select(
-      tx,
-      actor,
-      and(
-        state === 'open' ? isNull(recall.closedAt) : undefined,
-        state === 'closed' ? isNotNull(recall.closedAt) : undefined,
-        mine
-          ? sql`${countUses(sql`recall_use.decision is null and recall_use.owner_id = ${actor.personId}`)} > 0`
-          : undefined,
-      ),
-    );
-    const items = rows.slice(from, from + limit).map(toItem);
-    const end = from + limit;
-    return { items, next: end < rows.length ? end : null, total: rows.length };
+    const rows = await select(tx, actor, and(matching, onward), limit + 1);
+    const shown = rows.slice(0, limit);
+    const last = rows.length > limit ? shown.at(-1) : undefined;
+    return {
+      items: shown.map(toItem),
+      next: last ? [last.place, last.id] : null,
+      total: await tx.$count(recall, matching),
+    };
   });
 }
 
-/** A recall with every use that the reader may know of. */
-export async function toRecallView(tx: Tx, actor: Actor, found: RecallRow): Promise<RecallView> {
-  const items = await usesOf(tx, actor, found);
+/** A part of the uses of a recall. */
+export interface UsesPage {
+  readonly from: number;
+  readonly limit: number;
+}
+
+export type RecallRead = Omit<RecallView, 'next'> & { readonly next: number | null };
+
+/** A recall with a part of the uses that the reader may know of: the reader's own, then by job and mark. */
+export async function toRecallView(
+  tx: Tx,
+  actor: Actor,
+  found: RecallRow,
+  { from, limit }: UsesPage,
+): Promise<RecallRead> {
+  const uses = await usesOf(tx, actor, found);
+  const page = uses.slice(from, from + limit);
   const derived = await derivedFrom(tx, actor.practiceId, found.revisionId);
   return {
     ...toItem(found),
-    items,
-    hidden: found.uses - items.length,
+    items: await toUseViews(tx, actor, found, page),
+    next: from + limit < uses.length ? from + limit : null,
+    hidden: found.uses - uses.length,
     derived: derived.map(({ documentId: _, ...rest }) => rest),
   };
 }
@@ -147,12 +181,18 @@ export async function toDecidedView(
   memberId: string,
 ): Promise<DecidedView> {
   const found = await findRecall(tx, actor, recallId);
-  const [use] = await usesOf(tx, actor, found, eq(recallUse.memberId, memberId));
+  const uses = await usesOf(tx, actor, found, eq(recallUse.memberId, memberId));
+  const [use] = await toUseViews(tx, actor, found, uses);
   if (!use) throw notFound('This use of the recalled revision');
   return { recall: toItem(found), use };
 }
 
-async function usesOf(tx: Tx, actor: Actor, found: RecallRow, where?: SQL): Promise<RecallView['items']> {
+type UseOf = Awaited<ReturnType<typeof membersById>>[number] & {
+  readonly row: typeof recallUse.$inferSelect;
+};
+
+/** The uses that the reader may know of: the reader's own, then by job and mark. */
+async function usesOf(tx: Tx, actor: Actor, found: RecallRow, where?: SQL): Promise<UseOf[]> {
   const rows = await tx
     .select()
     .from(recallUse)
@@ -163,28 +203,36 @@ async function usesOf(tx: Tx, actor: Actor, found: RecallRow, where?: SQL): Prom
     tx,
     ids.filter((id) => visible.has(id)),
   );
+  const rowOf = new Map(rows.map((row) => [row.memberId, row]));
+  const uses = members.flatMap((use) => {
+    const row = rowOf.get(use.memberId);
+    return row ? [{ ...use, row }] : [];
+  });
+  const isOwn = ({ row }: UseOf) => row.ownerId === actor.personId;
+  return [...uses.filter(isOwn), ...uses.filter((use) => !isOwn(use))];
+}
+
+async function toUseViews(
+  tx: Tx,
+  actor: Actor,
+  { revisionId }: RecallRow,
+  uses: readonly UseOf[],
+): Promise<RecallView['items']> {
   const names = await namesOf(
     tx,
-    rows.flatMap(({ ownerId, decidedById }) => [ownerId, decidedById]),
+    uses.flatMap(({ row }) => [row.ownerId, row.decidedById]),
   );
-  const decisions = new Map(rows.map((row) => [row.memberId, row]));
-  return members.flatMap((use) => {
-    const row = decisions.get(use.memberId);
-    if (!row) return [];
-    return [
-      {
-        member: use.memberId,
-        job: { number: use.job, name: use.jobName },
-        mark: use.mark,
-        status: MEMBER_STATUSES.find((one) => one === use.status) ?? 'draft',
-        owner: names.get(row.ownerId) ?? '',
-        mine: row.ownerId === actor.personId,
-        pinned: use.pinned.includes(found.revisionId),
-        decision: row.decision,
-        note: row.note,
-        decided_by: row.decidedById && (names.get(row.decidedById) ?? ''),
-        decided_at: row.decidedAt?.toISOString() ?? null,
-      },
-    ];
-  });
+  return uses.map(({ row, ...use }) => ({
+    member: use.memberId,
+    job: { number: use.job, name: use.jobName },
+    mark: use.mark,
+    status: MEMBER_STATUSES.find((one) => one === use.status) ?? 'draft',
+    owner: names.get(row.ownerId) ?? '',
+    mine: row.ownerId === actor.personId,
+    pinned: use.pinned.includes(revisionId),
+    decision: row.decision,
+    note: row.note,
+    decided_by: row.decidedById && (names.get(row.decidedById) ?? ''),
+    decided_at: row.decidedAt?.toISOString() ?? null,
+  }));
 }

@@ -10,11 +10,21 @@ import { openJob } from '@/features/job/job.server';
 import { tell } from '@/features/notice/notice.server';
 import { AppError, invalid, notFound } from '@/lib/app-error';
 import { paths } from '@/paths';
-import { type Decide, type DecidedView, type RecallView, WITHOUT_USE } from './recall';
-import { findRecall, type RecallRow, toDecidedView, toRecallView } from './recall-view.server';
+import { type Decide, type DecidedView, WITHOUT_USE } from './recall';
+import {
+  findRecall,
+  type RecallRead,
+  type RecallRow,
+  toDecidedView,
+  toRecallView,
+  type UsesPage,
+} from './recall-view.server';
 import type { Consequence } from './review';
 import { type Actor, nameOfRevision, type RevisionRow } from './rows.server';
 import { membersById } from './uses.server';
+
+/** What comes with the answer to a step. */
+const FIRST_USES: UsesPage = { from: 0, limit: 50 };
 
 interface Withdrawal {
   readonly reason: string;
@@ -83,9 +93,9 @@ async function tellOwners(
     });
 }
 
-export function readRecall(actor: Actor, id: string): Promise<RecallView> {
+export function readRecall(actor: Actor, id: string, page: UsesPage): Promise<RecallRead> {
   requirePermission(actor, 'library.read');
-  return withPractice(actor, async (tx) => toRecallView(tx, actor, await findRecall(tx, actor, id)));
+  return withPractice(actor, async (tx) => toRecallView(tx, actor, await findRecall(tx, actor, id), page));
 }
 
 /** Records what becomes of one use, by name. It may be decided anew until the recall is closed. */
@@ -184,7 +194,7 @@ export async function decideByUpgrade(tx: Tx, actor: Actor, memberId: string): P
 }
 
 /** Closes a recall when every use has a decision. */
-export function closeRecall(actor: Actor, id: string): Promise<RecallView> {
+export function closeRecall(actor: Actor, id: string): Promise<RecallRead> {
   requirePermission(actor, 'recall.close');
   const { practiceId, personId } = actor;
   return withPractice(actor, async (tx) => {
@@ -202,7 +212,7 @@ export function closeRecall(actor: Actor, id: string): Promise<RecallView> {
       .update(recall)
       .set({ closedById: personId, closedAt: sql`now()` })
       .where(and(eq(recall.practiceId, practiceId), eq(recall.id, id)));
-    const view = await toRecallView(tx, actor, await findRecall(tx, actor, id));
+    const view = await toRecallView(tx, actor, await findRecall(tx, actor, id), FIRST_USES);
     await recordAudit(tx, actor, {
       action: 'recall.close',
       subjectKind: 'recall',

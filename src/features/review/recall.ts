@@ -74,7 +74,9 @@ export const RecallItem = z.strictObject({
 export type RecallItem = z.output<typeof RecallItem>;
 
 export const RecallView = RecallItem.extend({
+  /** A part of the uses: the reader's own, then by job and mark. */
   items: z.array(RecallUse),
+  next: z.string().nullable(),
   /** Uses in jobs that are not open to the reader. */
   hidden: z.int(),
   /** Documents that were made from the recalled revision. */
@@ -91,6 +93,10 @@ export const recallQuery = {
   /** Only recalls with a use that is the reader's to decide. */
   mine: z.stringbool().default(false),
 };
+
+/** Where a list of recalls goes on: the newest first. */
+export const RecallPlace = z.tuple([z.string(), z.uuid()]);
+export type RecallPlace = z.output<typeof RecallPlace>;
 
 /** POST …/withdraw. */
 export const WithdrawStep = z.strictObject({

@@ -1,5 +1,5 @@
 import { z } from 'zod';
-import { RecallItem, recallQuery } from '@/features/review/recall';
+import { RecallItem, RecallPlace, recallQuery } from '@/features/review/recall';
 import { listRecalls } from '@/features/review/recall-view.server';
 import { endpoint } from '@/http/endpoint';
 import { listOf, listQuery, readCursor, writeCursor } from '@/http/list';
@@ -12,8 +12,8 @@ export const GET = endpoint(
     answer: listOf(RecallItem),
   },
   async (_, { user, query: { limit, cursor, ...query } }) => {
-    const from = cursor === undefined ? 0 : readCursor(cursor, z.int().min(0));
-    const { next, ...found } = await listRecalls(user, query, { from, limit });
-    return { ...found, next: next === null ? null : writeCursor(next) };
+    const after = cursor === undefined ? undefined : readCursor(cursor, RecallPlace);
+    const { next, ...found } = await listRecalls(user, query, { after, limit });
+    return { ...found, next: next && writeCursor(next) };
   },
 );

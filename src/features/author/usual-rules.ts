@@ -1,9 +1,11 @@
 /** Rules that nearly every beam has, with values that break each. */
 import { supportLetter } from '@/engine/model';
+import { solveProven } from '@/features/beam/solve';
 import type { Written } from '@/features/review/draft';
 import { type Added, freshId } from './add';
 import { baysOf } from './bays';
 import { DraftSteps } from './draft-steps';
+import { sketchOf } from './drawing/sketch';
 import { listAt, textAt } from './edit';
 
 /** Those that the draft has not: no support lifts, overhangs are short, the beam is slender, and it moves little. */
@@ -49,10 +51,18 @@ function liftRule(document: Written): Rule | null {
     id: 'supports-push',
     title: standing.length === 1 ? 'The reaction is upward' : 'Every reaction is upward',
     expression: standing.map((symbol) => `${symbol} >= 0`).join(' and '),
-    severity: 'warn',
+    // A beam that lifts as it is meant to cannot be warned of it: at the defaults a warning must hold.
+    severity: lifts(document) ? 'note' : 'warn',
     message: `${standing.length === 1 ? 'The reaction is' : 'The reactions are'} ${shown}: one is uplift. Hold the beam down there.`,
     trial: { parameters: Object.fromEntries(upward) },
   };
+}
+
+/** Whether a support pulls at the defaults. */
+function lifts(document: Written): boolean {
+  const sketch = sketchOf(document);
+  const solved = sketch && solveProven(sketch.instance.beam);
+  return solved?.ok ? solved.value.solution.reactions.some(({ vertical }) => vertical < 0) : false;
 }
 
 const overhangRules = (document: Written): Rule[] => {

@@ -5,6 +5,7 @@ import type { Written } from '@/features/review/draft';
 import { type Added, addOverhang, addSpan } from '../add';
 import { applyEdits, type Edit, listAt, textAt, valueAt } from '../edit';
 import { startDocument } from '../start';
+import { addUsualRules } from '../usual-rules';
 import { addAt, addOver, newPlaceAt, type PlaceTool, wholeOf } from './add';
 import {
   choiceOf,
@@ -221,6 +222,14 @@ describe('whatever is added, moved and taken away', () => {
         : [];
     return place ? addAt(document, sketch, act as PlaceTool, place).edits : [];
   }
+});
+
+test('the usual rule about lifting only remarks on a beam that lifts as it is meant to', () => {
+  const severity = (document: Written) =>
+    textAt(edited(document, addUsualRules(document).edits), '/rules/0/severity');
+  expect(severity(start)).toBe('warn');
+  // A load at the tip alone lifts B: three-moment equation.
+  expect(severity(put(overhang, 'point', 'L1 + L2 + a'))).toBe('note');
 });
 
 describe('dragging', () => {

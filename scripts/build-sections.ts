@@ -82,8 +82,8 @@ function build(plan: Plan, sources: readonly Source[]): number {
   );
   const csv = Papa.unparse([headings(shape, units), ...lines], { newline: '\n' });
   const reading = readSectionTable(`${csv}\n`, meta);
-  for (const { line, column, severity, message } of reading.faults) {
-    console.log(`${plan.slug}.csv:${line} ${severity} ${column}: ${message}`);
+  for (const { line, heading, severity, message } of reading.faults) {
+    console.log(`${plan.slug}.csv:${line} ${severity} ${heading}: ${message}`);
   }
   if (!reading.ok) throw new Error(`${plan.slug}.csv is refused by its own importer`);
   writeFileSync(at(`${plan.slug}.csv`), `${csv}\n`);

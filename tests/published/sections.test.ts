@@ -28,7 +28,7 @@ describe('the shipped tables', () => {
   test.each(tables)(
     '$slug is read without a fault, and its sidecar is its own',
     ({ slug, meta, reading }) => {
-      expect(reading.faults).toEqual([]);
+      expect(reading.faults.filter(({ severity }) => severity !== 'note')).toEqual([]);
       expect(meta.slug).toBe(slug);
       for (const row of reading.rows) {
         expect(() => sectionRowSchema.parse(row)).not.toThrow();

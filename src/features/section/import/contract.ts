@@ -203,7 +203,8 @@ export type Finding = {
 export type Cause =
   | 'replacement_character'
   | 'byte_order_mark'
-  | 'quotes'
+  | 'unreadable'
+  | 'unanswered'
   | 'ragged_row'
   | 'row_shift'
   | 'summary_row'

@@ -31,6 +31,15 @@ export const TokenView = z.strictObject({
 });
 export type TokenView = z.output<typeof TokenView>;
 
+/** How long a token holds, and how many a person keeps. */
+export const TOKEN_DAYS = 90;
+export const MOST_TOKENS = 20;
+
+export const NewToken = z.strictObject({
+  name: z.string().trim().min(1, 'Say what it is for, so that you know it again.').max(60),
+});
+export type NewToken = z.output<typeof NewToken>;
+
 /** Later ones claim the names of earlier ones in their User-Agent. */
 const BROWSERS = [
   ['Edge', /\bEdg(?:e|A|iOS)?\//],

@@ -1,9 +1,10 @@
 import { beforeEach, describe, expect, test } from 'vitest';
 import { foundPractice, PASSWORD } from '../../../tests/support/practice';
 import type { User } from './account';
-import { userOfSession } from './identity.server';
+import { userOfSession, userOfToken } from './identity.server';
 import { takeAccountForm } from './settings.server';
 import { proveSignIn } from './sign-in.server';
+import { createApiToken, listTokens } from './token.server';
 
 const from = { address: '192.0.2.20', agent: null };
 
@@ -89,4 +90,47 @@ test('signing out everywhere ends this session too', async () => {
 test('a form that is not known is refused and changes nothing', async () => {
   expect(await take({ act: 'promote' })).toMatchObject({ kind: 'refused', status: 422 });
   await present();
+});
+
+describe('a token for programs', () => {
+  const ofToken = async (outcome: Awaited<ReturnType<typeof take>>) => {
+    if (outcome.kind !== 'token') throw new Error(JSON.stringify(outcome));
+    return userOfToken(outcome.token);
+  };
+
+  test('is shown once, acts as its person, and stands in the list without itself', async () => {
+    const outcome = await take({ act: 'make-token', name: ' Weekly export ' });
+    expect(outcome).toMatchObject({ kind: 'token', name: 'Weekly export' });
+    expect((await ofToken(outcome))?.personId).toBe(user.personId);
+    const [listed, ...others] = await listTokens(user);
+    expect([listed?.name, others]).toEqual(['Weekly export', []]);
+    expect(JSON.stringify(listed)).not.toContain(outcome.kind === 'token' ? outcome.token.slice(7) : '');
+  });
+
+  test.each(['', '   ', 'x'.repeat(61)])('named “%s” is refused at its field', async (name) => {
+    expect(await take({ act: 'make-token', name })).toMatchObject({
+      kind: 'refused',
+      status: 422,
+      errors: { name: expect.any(String) },
+    });
+  });
+
+  test('that is withdrawn works no longer; another person’s is not found', async () => {
+    const outcome = await take({ act: 'make-token', name: 'Script' });
+    const [{ id } = { id: '' }] = await listTokens(user);
+    const [stranger] = await foundPractice(['engineer']);
+    await createApiToken(stranger.email);
+    expect(await take({ act: 'revoke-token', id: crypto.randomUUID() })).toMatchObject({ status: 404 });
+    expect(await take({ act: 'revoke-token', id: 'none' })).toMatchObject({ kind: 'refused', status: 404 });
+    expect(await take({ act: 'revoke-token', id })).toEqual({ kind: 'done', done: 'token' });
+    expect(await ofToken(outcome)).toBeNull();
+  });
+
+  test('is one of twenty at most', async () => {
+    for (let count = 0; count < 20; count += 1) await take({ act: 'make-token', name: `No. ${count}` });
+    expect(await take({ act: 'make-token', name: 'One more' })).toMatchObject({
+      status: 409,
+      errors: { form: expect.stringContaining('20 tokens') },
+    });
+  });
 });

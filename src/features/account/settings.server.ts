@@ -1,22 +1,32 @@
 import { eq } from 'drizzle-orm';
+import { z } from 'zod';
 import { person } from '@/db/schema/account';
 import { withPractice } from '@/db/tenancy';
 import { recordAudit } from '@/features/audit/audit.server';
-import { AppError } from '@/lib/app-error';
+import { AppError, notFound } from '@/lib/app-error';
 import { read } from '@/lib/read';
 import type { User } from './account';
 import { changePassword } from './change-password.server';
-import type { RequestSource } from './session';
+import { NewToken, type RequestSource } from './session';
 import { endAllSessions, endSession } from './session.server';
 import { type AccountErrors, type Done, PasswordForm, Settings } from './settings';
+import { makeToken, revokeToken } from './token.server';
 
 /** What a form of the account page came to. The page sets the cookies. */
 export type AccountOutcome =
   | { readonly kind: 'done'; readonly done: Done; readonly settings?: Settings }
   | { readonly kind: 'signed-out' }
+  /** Shown on the page that answers, and never again. */
+  | { readonly kind: 'token'; readonly token: string; readonly name: string }
   | { readonly kind: 'refused'; readonly status: number; readonly errors: AccountErrors };
 
 const text = (form: FormData, name: string) => String(form.get(name) ?? '');
+
+function idOf(form: FormData, what: string): string {
+  const reading = z.uuid().safeParse(text(form, 'id'));
+  if (!reading.success) throw notFound(what);
+  return reading.data;
+}
 
 /** Takes the account page's form by the act it names. */
 export async function takeAccountForm(
@@ -31,8 +41,13 @@ export async function takeAccountForm(
       case 'password':
         return await savePassword(user, form, from);
       case 'end-session':
-        await endSession(user, text(form, 'id'));
+        await endSession(user, idOf(form, 'This session'));
         return { kind: 'done', done: 'session' };
+      case 'make-token':
+        return await saveToken(user, form);
+      case 'revoke-token':
+        await revokeToken(user, idOf(form, 'This token'));
+        return { kind: 'done', done: 'token' };
       case 'end-all':
         await endAllSessions(user);
         return { kind: 'signed-out' };
@@ -79,6 +94,12 @@ const saveUnits = (user: User, unitSystem: Settings['units']) =>
       after: { unitSystem },
     });
   });
+
+async function saveToken(user: User, form: FormData): Promise<AccountOutcome> {
+  const reading = read(NewToken, { name: text(form, 'name') });
+  if (!reading.ok) return refused(422, reading.faults);
+  return { kind: 'token', token: await makeToken(user, reading.value), name: reading.value.name };
+}
 
 async function savePassword(user: User, form: FormData, from: RequestSource): Promise<AccountOutcome> {
   const reading = read(PasswordForm, {

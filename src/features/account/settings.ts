@@ -23,8 +23,9 @@ export const DONE = {
   password: 'The password is changed. Other sessions were ended.',
   session: 'The session is ended.',
   notices: 'Saved.',
+  token: 'The token is withdrawn. Nothing works with it any more.',
 } as const;
 export type Done = keyof typeof DONE;
 
 export const readDone = (text: string | null): Done | undefined =>
-  (['settings', 'password', 'session', 'notices'] as const).find((done) => done === text);
+  (['settings', 'password', 'session', 'notices', 'token'] as const).find((done) => done === text);

@@ -5,6 +5,7 @@ import { verifyAllChains } from '@/features/audit/audit.server';
 import { resumeImpacts, runImpact } from '@/features/impact/weigh.server';
 import { resumeImports, runImport } from '@/features/imports/work.server';
 import { keepSending, readMailing } from '@/features/notice/mailer.server';
+import { sweepMail } from '@/features/notice/outbox-sweep.server';
 import { proveIssued, resumeProofs, runProof } from '@/features/proof/prove.server';
 import { remindOfReviews } from '@/features/review/remind.server';
 import { log } from '@/lib/log';
@@ -13,6 +14,7 @@ import { type Handlers, type Queue, workQueue } from '@/services/queue';
 const handlers: Handlers = {
   'sweep-sign-ins': async () => {
     log.info('swept sign-ins', await sweepSignIns());
+    log.info('swept mail', { removed: await sweepMail() });
   },
   'verify-audit-chains': async () => {
     const reports = await verifyAllChains();

@@ -7,7 +7,7 @@ import { shippedCriteria } from '../../../tests/support/criteria';
 import { shippedTemplate } from '../../../tests/support/templates';
 import { evaluateMember } from '../member/evaluate';
 import { drawnSolution, toStoredResult } from '../member/result';
-import { readPaper, shortCode, watermarkOf } from './sheet';
+import { newerTexts, pinTexts, readPaper, shortCode, watermarkOf } from './sheet';
 
 const SLUG = 'propped-cantilever-overhang-uniform';
 const CRITERIA = shippedCriteria('steel-elastic-en');
@@ -287,4 +287,52 @@ test('codes, papers and watermarks', () => {
     'A4',
   ]);
   expect([watermarkOf('draft'), watermarkOf('ready')]).toEqual(['Draft, not checked', 'Draft, not checked']);
+});
+
+describe('what a sheet says of the library since', () => {
+  const pin = {
+    slug: 's',
+    reference: 'R 1',
+    name: 'Name',
+    revision: 1,
+    state: 'issued' as const,
+    newer: null,
+    newer_note: null,
+    withdrawal_reason: null,
+    recall: null,
+    review: 'none' as const,
+    review_by: null,
+    withdrawn_ancestor: null,
+    confirmed: false,
+  };
+  const member = {
+    template: pin,
+    section: null,
+    criteria: pin,
+    combinations: pin,
+    materials: pin,
+    engine_version: '1.1.0',
+    fingerprint: null,
+  };
+  const withdrawn = { state: 'withdrawn' as const, withdrawal_reason: 'f_y was misread.' };
+
+  test('is nothing where everything stands', () => {
+    expect(newerTexts(member)).toEqual([]);
+  });
+
+  test.each([
+    ['template', 'The template was withdrawn: f_y was misread.'],
+    ['criteria', 'The criteria were withdrawn: f_y was misread.'],
+    ['combinations', 'The combination set was withdrawn: f_y was misread.'],
+    ['materials', 'The material set was withdrawn: f_y was misread.'],
+  ])('names %s that were withdrawn, or are newer', (part, words) => {
+    expect(newerTexts({ ...member, [part]: { ...pin, ...withdrawn } })).toEqual([words]);
+    expect(newerTexts({ ...member, [part]: { ...pin, newer: 2 } })[0]).toMatch(/^Revision 2 of the /);
+  });
+
+  test('names the revisions of the sets that were used', () => {
+    expect(pinTexts(member, 'metric')).toEqual(
+      expect.arrayContaining(['Materials Name, revision 1', 'Combinations Name, revision 1']),
+    );
+  });
 });

@@ -36,33 +36,49 @@ export const shortCode = (fingerprint: string): string =>
 export const watermarkOf = (status: MemberView['status']): string =>
   status === 'removed' ? 'Removed, not for use' : 'Draft, not checked';
 
-type Pinned = Pick<MemberView, 'template' | 'section' | 'criteria' | 'engine_version' | 'fingerprint'>;
+type Pinned = Pick<
+  MemberView,
+  'template' | 'section' | 'criteria' | 'combinations' | 'materials' | 'engine_version' | 'fingerprint'
+>;
 
 /** "Overhang 1, Propped cantilever with overhang, revision 2", and so on. */
 export function pinTexts(member: Pinned, system: UnitSystemName): string[] {
-  const { template, section, criteria, engine_version: engine, fingerprint } = member;
+  const {
+    template,
+    section,
+    criteria,
+    combinations,
+    materials,
+    engine_version: engine,
+    fingerprint,
+  } = member;
   return [
     `Template ${template.reference}, ${template.name}, revision ${template.revision}`,
     section ? `Sections ${section.table_name}, edition ${section.edition}` : 'No section',
+    ...(materials ? [`Materials ${materials.name}, revision ${materials.revision}`] : []),
     criteria ? `Criteria ${criteria.name}, revision ${criteria.revision}` : 'No criteria',
+    ...(combinations ? [`Combinations ${combinations.name}, revision ${combinations.revision}`] : []),
     system === 'metric' ? 'Metric units' : 'US customary units',
     ...(engine === null ? [] : [`Engine ${engine}`]),
     ...(fingerprint === null ? [] : [`Verification code ${shortCode(fingerprint)}`]),
   ];
 }
 
-/** What has been issued since, which a reader of this sheet should know. */
-export function newerTexts({ template, section, criteria }: Pinned): string[] {
-  return [
-    ...(template.newer === null ? [] : [`Revision ${template.newer} of the template has been issued since.`]),
-    ...(template.state === 'withdrawn'
-      ? [`The template was withdrawn: ${template.withdrawal_reason ?? 'no reason is given'}.`]
-      : []),
-    ...(section === null || section.newer === null
-      ? []
-      : [`Edition ${section.newer} of the section table has been issued since.`]),
-    ...(criteria === null || criteria.newer === null
-      ? []
-      : [`Revision ${criteria.newer} of the criteria has been issued since.`]),
+/** What has been issued since, or was withdrawn, which a reader of this sheet should know. */
+export function newerTexts({ template, section, criteria, combinations, materials }: Pinned): string[] {
+  const pins = [
+    { pin: template, name: 'the template', verb: 'was', count: 'Revision' },
+    { pin: section, name: 'the section table', verb: 'was', count: 'Edition' },
+    { pin: materials, name: 'the material set', verb: 'was', count: 'Revision' },
+    { pin: criteria, name: 'the criteria', verb: 'were', count: 'Revision' },
+    { pin: combinations, name: 'the combination set', verb: 'was', count: 'Revision' },
   ];
+  return pins.flatMap(({ pin, name, verb, count }) => [
+    ...(pin?.newer == null ? [] : [`${count} ${pin.newer} of ${name} has been issued since.`]),
+    ...(pin?.state === 'withdrawn'
+      ? [
+          `${name.replace('the', 'The')} ${verb} withdrawn: ${(pin.withdrawal_reason ?? 'no reason is given').replace(/\.$/, '')}.`,
+        ]
+      : []),
+  ]);
 }

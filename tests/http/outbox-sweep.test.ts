@@ -7,7 +7,7 @@ const now = new Date('2027-01-01T00:00:00Z');
 
 async function write(days: number, state: 'waiting' | 'sent' | 'failed', dedupe: string): Promise<void> {
   const [{ practiceId, personId }] = await foundPractice(['engineer']);
-  const at = new Date(now.getTime() - days * DAY);
+  const at = new Date(now.getTime() - days * DAY).toISOString();
   await owner.sql`insert into mail (practice_id, person_id, kind, data, mode, dedupe, state, created_at, sent_at)
     values (${practiceId}, ${personId}, 'issued', '{}', 'immediate', ${dedupe}, ${state}, ${at}, ${state === 'sent' ? at : null})`;
 }

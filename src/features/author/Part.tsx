@@ -2,6 +2,7 @@ import { type ReactNode, useEffect, useRef } from 'react';
 import { Button } from '@/components/ui/Button';
 import { FieldNote } from '@/components/ui/Field';
 import { removal, reordering, whyKept } from './drawing/change';
+import { isAtDrawing } from './drawing/in-view';
 import { type Pointer, parentOf } from './edit';
 import { useReadOnly } from './fields';
 import { useDraft, useFaultAt, useFaultIn, useIsSelected, useSnapshot } from './use-editor';
@@ -25,7 +26,7 @@ export function Part({ at, title, line, name, count, children }: PartProps) {
   const ownFault = useFaultAt(at);
   const place = useRef<HTMLLIElement>(null);
   useEffect(() => {
-    if (isOpen && !place.current?.contains(document.activeElement))
+    if (isOpen && !place.current?.contains(document.activeElement) && !isAtDrawing())
       place.current?.scrollIntoView({ block: 'nearest' });
   }, [isOpen]);
   return (

@@ -12,7 +12,7 @@ import { Findings } from './Findings';
 import { NotDrawn } from './NotDrawn';
 import { PartBar } from './PartBar';
 import { isPlaceTool, LengthPicker, PlacePicker, type Tool } from './Placing';
-import { partMoves } from './part-moves';
+import { type Drag, partMoves } from './part-moves';
 import { drawnOf, type Part } from './parts';
 import { beamOf } from './releases';
 import { focusParts, isChosen, Stage } from './Stage';
@@ -38,17 +38,28 @@ const WIDTH = 760;
 export function DraftDrawing({ editor, letter = 'A', system = 'metric' }: DraftDrawingProps) {
   const { template, sketch, isNow, faults } = useSketch(editor);
   const [tool, setTool] = useState<Tool | null>(null);
+  const stage = useRef<HTMLDivElement>(null);
   const add = ({ edits, select }: Added) => {
-    setTool(null);
-    editor.edit(...edits);
-    editor.select(select);
+    const isPlaced = tool !== null;
+    // What is placed is followed by the focus; the page stays where it is.
+    if (isPlaced) stage.current?.focus({ preventScroll: true });
+    flushSync(() => {
+      setTool(null);
+      editor.edit(...edits);
+      editor.select(select);
+    });
+    if (isPlaced) focusParts(stage.current);
   };
   const canAdd = !editor.readOnly && (isNow || sketch === null);
   const { document } = editor;
   const extend = (way: Extending) => add(way === 'span' ? addSpan(document) : addOverhang(document, way));
   return (
     <>
-      <section className="grid gap-10 px-(--pad) pt-12 pb-10 [&>*]:min-w-0" aria-label="Drawing">
+      <section
+        className="grid gap-10 px-(--pad) pt-12 pb-10 [&>*]:min-w-0"
+        aria-label="Drawing"
+        data-drawing="tools"
+      >
         <ZoneHeading letter={letter}>Drawing</ZoneHeading>
         {!isNow && <NotDrawn editor={editor} isEmpty={sketch === null} />}
         {canAdd && (
@@ -62,6 +73,7 @@ export function DraftDrawing({ editor, letter = 'A', system = 'metric' }: DraftD
       </section>
       {sketch && (
         <Beam
+          stage={stage}
           editor={editor}
           sketch={sketch}
           isNow={isNow}
@@ -87,6 +99,7 @@ function whyNot(document: Written, tool: AnyTool, hasBeam: boolean): string | nu
 }
 
 interface BeamProps {
+  readonly stage: RefObject<HTMLDivElement | null>;
   readonly editor: EditorState;
   readonly sketch: Sketch;
   readonly isNow: boolean;
@@ -99,14 +112,14 @@ interface BeamProps {
 }
 
 /** The beam, which stays in view, and below it what is said of the chosen part and of the whole. */
-function Beam({ editor, sketch, isNow, system, tool, onAdd, onLeave, children }: BeamProps) {
-  const stage = useRef<HTMLDivElement>(null);
+function Beam({ stage, editor, sketch, isNow, system, tool, onAdd, onLeave, children }: BeamProps) {
   const width = useWidth(stage, WIDTH);
   const drawn = useMemo(() => drawnOf(sketch), [sketch]);
   const layout = useMemo(() => layStage(drawn.beam, width), [drawn, width]);
   const reading = useMemo(() => beamOf(sketch), [sketch]);
   const bar = useRef<HTMLDivElement>(null);
-  const moves = partMoves(editor, sketch);
+  const drag = useRef<Drag | null>(null);
+  const moves = partMoves(editor, sketch, drag);
   const part = drawn.parts.find(({ pointer }) => isChosen(pointer, editor.selected));
   const remove = (gone: Part) => {
     flushSync(() => moves.remove(gone));
@@ -135,6 +148,7 @@ function Beam({ editor, sketch, isNow, system, tool, onAdd, onLeave, children }:
         ref={bar}
         className="grid gap-10 border-b border-ink px-(--pad) pt-8 pb-14 [&>*]:min-w-0"
         aria-label="Chosen part, values and results"
+        data-drawing="bar"
       >
         {tool && <PlacingHelp tool={tool} onLeave={onLeave} />}
         {isNow && part && !tool && (
@@ -178,7 +192,12 @@ function InView({ of, height, children }: InViewProps) {
           {isFolded ? 'Show the beam' : 'Fold the beam away'}
         </Button>
       </div>
-      <div ref={of} className={isFolded ? 'max-md:hidden' : ''}>
+      <div
+        ref={of}
+        tabIndex={-1}
+        data-drawing="beam"
+        className={`outline-none ${isFolded ? 'max-md:hidden' : ''}`}
+      >
         {children}
       </div>
     </div>

@@ -62,6 +62,9 @@ export function PartBar({ editor, sketch, part, onRemove }: PartBarProps) {
           {settles ? 'Let it not settle' : 'Let it settle'}
         </Button>
       )}
+      <Button size="small" onClick={() => showInForm(pointer)}>
+        Show in the form
+      </Button>
       {kind !== 'dimension' && (
         <Button size="small" keyName={why === undefined ? 'Del' : undefined} reason={why} onClick={onRemove}>
           Remove
@@ -69,6 +72,13 @@ export function PartBar({ editor, sketch, part, onRemove }: PartBarProps) {
       )}
     </fieldset>
   );
+}
+
+/** Its row of the form, which is open: that is where its other fields are. */
+function showInForm(pointer: string): void {
+  const row = window.document.querySelector<HTMLElement>(`li[data-part="${CSS.escape(pointer)}"] > button`);
+  row?.scrollIntoView({ block: 'start' });
+  row?.focus({ preventScroll: true });
 }
 
 const KEYS = ['at', 'from', 'to'] as const;

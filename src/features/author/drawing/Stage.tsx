@@ -201,6 +201,7 @@ function PartGrip({
   const held = useRef<{ readonly x: number; readonly perPx: number; isDragged: boolean } | null>(null);
   const onPointerDown = (event: PointerEvent<SVGGElement>) => {
     if (event.button !== 0) return;
+    event.currentTarget.focus({ preventScroll: true });
     on.onSelect();
     const box = event.currentTarget.ownerSVGElement?.getBoundingClientRect();
     if (!box) return;

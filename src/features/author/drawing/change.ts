@@ -1,7 +1,7 @@
 /** Changing what stands on a beam: its place, its kind, and taking it away. */
 import { type SupportKind, supportLetter } from '@/engine/model';
 import { toUnit } from '@/engine/quantity';
-import { limitsOf, type Template, unitOf } from '@/engine/template';
+import { limitsOf, type Template, type Tree, unitOf } from '@/engine/template';
 import type { Written } from '@/features/review/draft';
 import { affectAll, parameter } from '../add';
 import type { DraftSteps } from '../draft-steps';
@@ -188,8 +188,8 @@ export interface Handle {
 }
 
 /** The parameter that a place ends with, where it is one: c of "L1 + c". Its shown value follows the hand. */
-export function handleOf({ template, values }: Sketch, at: Template['beam']['length']): Handle | null {
-  const last = [...(linearOf(at.tree) ?? [])].at(-1);
+export function handleOf({ template, values }: Sketch, at: Tree): Handle | null {
+  const last = [...(linearOf(at) ?? [])].at(-1);
   if (last?.[1] !== 1) return null;
   const [symbol] = last;
   const parameter = template.parameters.find((one) => one.symbol === symbol);

@@ -238,7 +238,7 @@ describe('dragging', () => {
   const load = sketch.template.beam.loads[0];
 
   test('changes the length that a place ends with, to its step and within its range', () => {
-    const handle = load && 'at' in load ? handleOf(sketch, load.at) : null;
+    const handle = load && 'at' in load ? handleOf(sketch, load.at.tree) : null;
     if (!handle) throw new Error('a moves it');
     expect(handle.symbol).toBe('a');
     expect(draggedTo(sketch.template, {}, handle, 0.33)).toEqual({ a: '1.85 m' });
@@ -246,8 +246,13 @@ describe('dragging', () => {
     expect(draggedTo(sketch.template, {}, handle, 900)).toEqual({ a: '15 m' });
   });
 
+  test('of a dimension changes the length that it is of', () => {
+    const handle = handleOf(sketch, 'L2');
+    expect(handle && draggedTo(sketch.template, {}, handle, -1.02)).toEqual({ L2: '5 m' });
+  });
+
   test('has no hold on a place that no length ends', () => {
     const half = sketched(put(overhang, 'point', 'L1/2')).template.beam.loads[0];
-    expect(half && 'at' in half ? handleOf(sketch, half.at) : null).toBeNull();
+    expect(half && 'at' in half ? handleOf(sketch, half.at.tree) : null).toBeNull();
   });
 });

@@ -7,12 +7,11 @@ import { placesOf, snapped } from './places';
 import type { Sketch } from './sketch';
 
 /** Where a drag began: the hand's way is measured from there, whatever is drawn meanwhile. */
-interface Drag {
+export interface Drag {
   readonly sketch: Sketch;
   readonly handle: Handle | null;
   readonly from: number;
 }
-let begun: Drag | null = null;
 
 /** A dragged part draws to places within this share of the beam. */
 const REACH = 0.02;
@@ -22,7 +21,15 @@ const placeIn = ({ template }: Sketch, part: Part): Expression | null => {
   return typeof at === 'object' && at !== null ? (at as Expression) : null;
 };
 
-export function partMoves(editor: EditorState, sketch: Sketch) {
+/** The length that follows the hand: what the place ends with, or what is dimensioned. */
+function handleIn(sketch: Sketch, part: Part): Handle | null {
+  const at = placeIn(sketch, part);
+  if (at) return handleOf(sketch, at.tree);
+  const symbol = valueAt(sketch.template, `${part.pointer}/symbol`);
+  return part.kind === 'dimension' && typeof symbol === 'string' ? handleOf(sketch, symbol) : null;
+}
+
+export function partMoves(editor: EditorState, sketch: Sketch, drag: { current: Drag | null }) {
   const { document, readOnly } = editor;
   const put = (part: Part, of: Sketch, x: number) => {
     const place = snapped(placesOf(of), x, REACH * of.instance.beam.length);
@@ -37,18 +44,16 @@ export function partMoves(editor: EditorState, sketch: Sketch) {
     },
     /** A place that ends with a length changes the value shown; another is put from place to place. */
     drag(part: Part, by: number, isBegun: boolean) {
-      if (isBegun || !begun) {
-        const at = placeIn(sketch, part);
-        begun = { sketch, handle: at && handleOf(sketch, at), from: part.from };
-      }
-      const { handle, from, sketch: before } = begun;
+      if (isBegun || !drag.current)
+        drag.current = { sketch, handle: handleIn(sketch, part), from: part.from };
+      const { handle, from, sketch: before } = drag.current;
       if (handle) editor.setValues(draggedTo(before.template, editor.values, handle, by));
       else if (!readOnly && placeIn(sketch, part)) put(part, before, from + by);
     },
     /** By a step of the length that it ends with, or to the next place. */
     nudge(part: Part, steps: number) {
       const at = placeIn(sketch, part);
-      const handle = at && handleOf(sketch, at);
+      const handle = handleIn(sketch, part);
       if (handle) {
         editor.setValues(draggedTo(sketch.template, editor.values, handle, steps * handle.step));
         return;

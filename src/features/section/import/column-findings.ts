@@ -21,33 +21,23 @@ const TABULATED_NAMES = Object.keys(TABULATED) as TabulatedName[];
 
 const median = (sorted: Float64Array) => sorted[Math.floor(sorted.length / 2)] ?? Number.NaN;
 
-type Ratios = { rows: number[]; logs: Float64Array };
-
-/** Logarithms of tabulated over computed, for each property that the file has. */
-function ratiosOf(store: RowStore, mapping: Mapping, density: number): Map<TabulatedName, Ratios> {
+/** Logarithms of tabulated over computed, row by row, for each property that the file has; NaN where a row has none. */
+function ratiosOf(store: RowStore, mapping: Mapping): Map<TabulatedName, Float64Array> {
   const names = TABULATED_NAMES.filter((name) => store.fields.includes(name));
-  const rows = new Map(names.map((name) => [name, [] as number[]]));
-  const logs = new Map(names.map((name) => [name, [] as number[]]));
+  const logs = names.map(() => new Float64Array(store.count).fill(Number.NaN));
   for (let at = 0; at < store.count; at++) {
     const dimensions = possible(store, at, mapping);
     if (!dimensions) continue;
     const computed = sectionProperties(dimensions);
-    for (const name of names) {
+    const isDesignWall = mapping.tubeStandard === 'ASTM A500' && 't' in dimensions;
+    const mass = mapping.density * computed.area * (isDesignWall ? NOMINAL_MASS : 1);
+    for (const [k, name] of names.entries()) {
       const value = store.value(name, at);
-      const isDesignWall = mapping.tubeStandard === 'ASTM A500' && 't' in dimensions;
-      const ofMass = density * computed.area * (isDesignWall ? NOMINAL_MASS : 1);
-      const expected = name === 'mass' ? ofMass : computed[name];
-      if (!(value > 0) || !(expected > 0)) continue;
-      rows.get(name)?.push(at);
-      logs.get(name)?.push(Math.log(value / expected));
+      const expected = name === 'mass' ? mass : computed[name];
+      if (value > 0 && expected > 0) (logs[k] as Float64Array)[at] = Math.log(value / expected);
     }
   }
-  return new Map(
-    names.map((name) => [
-      name,
-      { rows: rows.get(name) ?? [], logs: Float64Array.from(logs.get(name) ?? []) },
-    ]),
-  );
+  return new Map(names.map((name, k) => [name, logs[k] as Float64Array]));
 }
 
 /** What is wrong with whole columns, each once; the store is corrected for it as the second reading will be. */
@@ -62,9 +52,9 @@ export function columnFindings(store: RowStore, mapping: Mapping, plan: Plan): C
   found.findings.push(...swapped.findings);
   found.swaps = [...found.swaps, ...swapped.swaps];
   const judged = { ...mapping, ...found.assumed };
-  for (const [name, ratios] of ratiosOf(store, judged, judged.density)) {
+  for (const [name, logs] of ratiosOf(store, judged)) {
     const column = fieldColumn(plan, name, found.swaps);
-    if (column && ratios.rows.length >= FEW) judgeColumn(name, ratios, column, store, found, judged);
+    if (column) judgeColumn(name, logs, column, store, found, judged);
   }
   return found;
 }
@@ -79,33 +69,36 @@ function fieldColumn(plan: Plan, field: NumberField, swapped: FileFacts['swaps']
 
 function judgeColumn(
   name: TabulatedName,
-  { rows, logs }: Ratios,
+  logs: Float64Array,
   column: NumberColumn,
   store: RowStore,
   found: ColumnFindings,
   mapping: Mapping,
 ): void {
-  const middle = median(Float64Array.from(logs).sort());
-  const agreeing = logs.reduce((sum, log) => (Math.abs(log - middle) <= SAME ? sum + 1 : sum), 0);
+  const given = logs.filter((log) => !Number.isNaN(log)).sort();
+  if (given.length < FEW) return;
+  const middle = median(given);
+  const agreeing = agreeingWithin(given, middle, SAME);
   const slip = unitSlip(Math.exp(middle), column);
   const limit = ROUGH.has(name) ? ROUGHLY_OFF : OFF;
   const isTogether =
-    agreeing >= MOST * logs.length || (slip !== null && agreeingWithin(logs, middle) >= MOST * logs.length);
+    agreeing >= MOST * given.length ||
+    (slip !== null && agreeingWithin(given, middle, NEAR) >= MOST * given.length);
   if (isTogether && (slip || Math.abs(middle) > limit)) {
     columnSlip(
-      { name, column, slip, ratio: Math.exp(middle), agreeing, of: logs.length },
+      { name, column, slip, ratio: Math.exp(middle), agreeing, of: given.length },
       store,
       found,
       mapping,
     );
     return;
   }
-  mixedUnits(rows, logs, column, store, found);
+  mixedUnits(logs, given.length, column, store, found);
 }
 
 const NEAR = 0.06; // where values of few figures scatter about a slip of units
-const agreeingWithin = (logs: Float64Array, middle: number) =>
-  logs.reduce((sum, log) => (Math.abs(log - middle) <= NEAR ? sum + 1 : sum), 0);
+const agreeingWithin = (logs: Float64Array, middle: number, by: number) =>
+  logs.reduce((sum, log) => (Math.abs(log - middle) <= by ? sum + 1 : sum), 0);
 
 type Slipped = {
   name: TabulatedName;
@@ -181,23 +174,24 @@ const FAR = Math.log(1.3); // a factor between units is farther from 1 than any 
 
 /** Clusters of rows a known factor away from the others. */
 function mixedUnits(
-  rows: readonly number[],
   logs: Float64Array,
+  given: number,
   column: NumberColumn,
   store: RowStore,
   found: ColumnFindings,
 ): void {
   const clusters = new Map<string, { slip: UnitSlip; rows: number[] }>();
-  for (const [k, log] of logs.entries()) {
-    if (Math.abs(log) < FAR) continue;
+  for (let at = 0; at < logs.length; at++) {
+    const log = logs[at] ?? Number.NaN;
+    if (!(Math.abs(log) >= FAR)) continue;
     const slip = unitSlip(Math.exp(log), column);
     if (!slip) continue;
     const cluster = clusters.get(slip.words) ?? { slip, rows: [] };
-    cluster.rows.push(rows[k] ?? 0);
+    cluster.rows.push(at);
     clusters.set(slip.words, cluster);
   }
   for (const { slip, rows: members } of clusters.values()) {
-    if (members.length < Math.max(FEW, SOME * rows.length)) continue;
+    if (members.length < Math.max(FEW, SOME * given)) continue;
     const lines = members.map((at) => store.lines[at] ?? 0);
     const { unit, factor, words, correction } = slip;
     const edit = {
@@ -218,7 +212,7 @@ function mixedUnits(
         heading: column.heading,
         read: withUnit(value, column),
         expected: withUnit(value * correction, column),
-        formula: `${members.length} of ${rows.length} rows fit when they are read in ${words}`,
+        formula: `${members.length} of ${given} rows fit when they are read in ${words}`,
         message: `Two units in one column: ${members.length} rows, the first in line ${lines[0]}, look like ${words}.`,
         fixes: [{ label: `Read these ${members.length} cells in ${words}`, reach: 'column', edit }],
       }),

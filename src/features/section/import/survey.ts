@@ -27,7 +27,7 @@ type ColumnCount = { cells: number; decimals: number; zeros: number; owns: { lin
 export class Survey implements SurveyReading {
   private readonly body: BodyReader;
   private readonly plan: Plan;
-  private readonly store: RowStore;
+  private store: RowStore;
   private readonly names = new NameCount();
   private readonly cells = new Map<number, ColumnCount>();
   private refusal: Refusal | null = null;
@@ -56,7 +56,10 @@ export class Survey implements SurveyReading {
         message: 'The file has no row under its headings that is a section.',
       };
     }
-    return this.refusal ? { ok: false, refusal: this.refusal } : { ok: true, facts: this.facts() };
+    if (this.refusal) return { ok: false, refusal: this.refusal };
+    const facts = this.facts();
+    this.store = new RowStore([]); // some 20 MB of a large file, which the second reading needs itself
+    return { ok: true, facts };
   }
 
   private take(lines: FileLine[] | Refusal): void {

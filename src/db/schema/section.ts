@@ -1,3 +1,4 @@
+import { sql } from 'drizzle-orm';
 import {
   check,
   doublePrecision,
@@ -28,6 +29,11 @@ export const section = pgTable(
     designation: text().notNull(),
     /** The designation as it is searched for: one spelling for however it is typed. */
     designationKey: text().notNull(),
+    /** Its letters and its sizes, by which designations are sorted: kept, since a pattern for every row is dear. */
+    family: text().generatedAlwaysAs(sql`substring(designation_key from '^[a-z]*')`),
+    sizes: doublePrecision()
+      .array()
+      .generatedAlwaysAs(sql`string_to_array(regexp_replace(designation_key, '^[a-z]*', ''), 'x')::float8[]`),
     printed: text().notNull(),
     shape: text({ enum: SECTION_SHAPES }).notNull(),
     depthMm: doublePrecision().notNull(),
@@ -54,8 +60,9 @@ export const section = pgTable(
       foreignColumns: [revision.practiceId, revision.id],
     }),
     uniqueIndex('section_designation').on(table.practiceId, table.revisionId, table.designationKey),
-    index('section_depth').on(table.practiceId, table.revisionId, table.depthMm),
-    index('section_mass').on(table.practiceId, table.revisionId, table.massKgM),
+    // Of every edition: pages are read in their order, and counted from them alone.
+    index('section_by_depth').on(table.practiceId, table.depthMm, table.massKgM, table.revisionId),
+    index('section_by_mass').on(table.practiceId, table.massKgM, table.depthMm, table.revisionId),
     check('section_shape', oneOf(table.shape, SECTION_SHAPES)),
     tenantPolicy('section'),
   ],

@@ -14,20 +14,28 @@ export function SaveNote() {
   if (useSnapshot((snapshot) => snapshot.readOnly)) return <span>Version {version}</span>;
   return (
     <span role="status" data-saving={conflicts > 0 ? 'conflict' : saving.kind}>
-      {conflicts > 0 ? 'Not saved: decide first' : wordsOf(saving.kind)}
+      {conflicts > 0 || saving.kind === 'refused' ? (
+        <a className="link" href={`#${NOTICES}`}>
+          {conflicts > 0 ? 'Not saved: decide first' : 'Not saved: why'}
+        </a>
+      ) : (
+        wordsOf(saving.kind)
+      )}
       {conflicts === 0 && saving.kind === 'saved' && saving.at && ` ${TIME.format(saving.at)}`} · version{' '}
       {version}
     </span>
   );
 }
 
-const wordsOf = (kind: 'saved' | 'waiting' | 'saving' | 'offline' | 'refused'): string =>
+/** Where the notices stand, above the drawing: whoever writes further down is led there. */
+const NOTICES = 'save-notices';
+
+const wordsOf = (kind: 'saved' | 'waiting' | 'saving' | 'offline'): string =>
   ({
     saved: 'Saved',
     waiting: 'Not saved yet',
     saving: 'Saving',
     offline: 'No answer: kept here',
-    refused: 'Not saved',
   })[kind];
 
 /** What keeps the draft from being saved, and what somebody else changed meanwhile. */
@@ -37,7 +45,7 @@ export function SaveNotices({ autosave }: { readonly autosave: () => Autosave | 
   const mergedAt = useSnapshot((snapshot) => snapshot.mergedAt);
   const again = <Button onClick={() => void autosave()?.flush()}>Save now</Button>;
   return (
-    <>
+    <div id={NOTICES} tabIndex={-1}>
       {saving.kind === 'offline' && (
         <Notice title="The server does not answer." actions={again}>
           <p>Go on writing: it is kept in this tab, and saved as soon as the server answers.</p>
@@ -54,7 +62,7 @@ export function SaveNotices({ autosave }: { readonly autosave: () => Autosave | 
         </Notice>
       )}
       {conflicts.length > 0 && <Conflicts />}
-    </>
+    </div>
   );
 }
 

@@ -33,3 +33,22 @@ export function listCriteria(actor: Person & Tenant): Promise<IssuedCriteria[]> 
       }));
   });
 }
+
+interface Referring {
+  readonly slug: string;
+  readonly reference: string;
+  readonly name: string;
+  readonly revision: number;
+  /** The revision of the set that they refer to. */
+  readonly setRevision: number;
+}
+
+/** The criteria whose issued revision refers to a combination set. */
+export async function criteriaReferringTo(actor: Person & Tenant, set: string): Promise<Referring[]> {
+  const issued = await listCriteria(actor);
+  return issued.flatMap(({ document, ...rest }) =>
+    document.schema_version === 2 && document.combinations.set === set
+      ? [{ ...rest, setRevision: document.combinations.revision }]
+      : [],
+  );
+}

@@ -39,7 +39,7 @@ export function BasisFields({ draft, data, faults, onChange }: BasisFieldsProps)
         )}
         <OwnWeight draft={draft} onChange={onChange} />
       </div>
-      <div className="px-14 pt-8 pb-9 md:col-span-2">
+      <div className="grid content-start gap-8 px-14 pt-8 pb-9 md:col-span-2">
         <ChoiceField
           label="Criteria"
           value={draft.criteria}

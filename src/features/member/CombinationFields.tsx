@@ -31,7 +31,11 @@ export function CombinationFields({ draft, data, faults, onChange }: Combination
         help={set && said(set)}
         onChange={(event) => onChange({ combinations: event.target.value, categories: {} })}
       />
-      {set && <CategoryFields {...{ draft, set, criteria, onChange }} />}
+      {set && (
+        <div className="grid gap-x-14 gap-y-8 md:grid-cols-2">
+          <CategoryFields {...{ draft, set, criteria, onChange }} />
+        </div>
+      )}
     </>
   );
 }

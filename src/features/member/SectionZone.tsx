@@ -76,7 +76,7 @@ export function SectionZone({ section, inputs, materials, system, mayEdit, onPic
                 isUsed={section?.table === item.table && section.values.designation === item.designation}
                 system={system}
                 massName={units.massName}
-                onPick={mayEdit ? () => onPick(draftSection(item, section)) : undefined}
+                onPick={mayEdit ? () => onPick(draftSection(item, section, materials)) : undefined}
               />
             ))}
           </tbody>

@@ -36,7 +36,11 @@ export function sectionQuery(
 }
 
 /** The section as the draft takes it: of the material in use where sections like it are made of the same, else of the usual one. */
-export function draftSection(item: SectionItem, current: DraftSection | null): DraftSection {
+export function draftSection(
+  item: SectionItem,
+  current: DraftSection | null,
+  materials: readonly MaterialChoice[],
+): DraftSection {
   const values = toSectionValues(item);
   const usual = usualMaterial(values, item.table);
   const isAlike = current !== null && usualMaterial(current.values, current.table) === usual;
@@ -44,7 +48,7 @@ export function draftSection(item: SectionItem, current: DraftSection | null): D
     values,
     table: item.table,
     origin: toRowOrigin(item),
-    material: isAlike ? current.material : usual,
+    material: isAlike ? current.material : (choiceOf(materials, usual)?.key ?? usual),
   };
 }
 

@@ -61,7 +61,7 @@ export function useUtilisations(
     const next = (index: number) => {
       const item = items[index];
       if (!item) return setFound(new Map(results));
-      results.set(item, utilisationWith(rested, draftSection(item, current), materials));
+      results.set(item, utilisationWith(rested, draftSection(item, current, materials), materials));
       timer = setTimeout(() => next(index + 1));
     };
     timer = setTimeout(() => next(0));

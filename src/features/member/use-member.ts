@@ -8,6 +8,7 @@ import type { MemberView, SaveMember } from './member';
 import { putMember } from './member.api';
 import { sameFigures, toStoredResult } from './result';
 import {
+  asSaved,
   bodyOf,
   changesOf,
   type Draft,
@@ -65,6 +66,7 @@ export function useMember(data: WorkspaceData) {
     const isSame = evaluation !== null && result !== null && sameFigures(toStoredResult(evaluation), result);
     const saved = read(outcome.member);
     setMember(saved);
+    setDraft((before) => asSaved(before, saved));
     setHistory([savedLine(member, saved), ...history]);
     setSaving({ kind: 'saved', isSame });
     return outcome.member;

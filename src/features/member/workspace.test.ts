@@ -144,14 +144,18 @@ describe('candidate sections', () => {
   };
 
   test('are judged as the member would be with them', () => {
-    const found = utilisationWith(inputs({ section: null }), draftSection(item, null), MATERIAL_CHOICES);
+    const found = utilisationWith(
+      inputs({ section: null }),
+      draftSection(item, null, MATERIAL_CHOICES),
+      MATERIAL_CHOICES,
+    );
     const rows = evaluated().checks?.rows ?? [];
     const bending = rows.find(({ kind }) => kind === 'bending')?.ratio ?? Number.NaN;
     expect(found).toMatchObject({ bending: expect.closeTo(bending, 9) });
   });
 
   test('are made of what such sections are usually made of, or of what is in use', () => {
-    const european = draftSection(item, null);
+    const european = draftSection(item, null, MATERIAL_CHOICES);
     const american = { ...item, table: 'american-wide-flange' };
     const inch = {
       ...item,
@@ -160,13 +164,13 @@ describe('candidate sections', () => {
       shape: 'rectangle' as const,
     };
     expect(european.material).toBe('s355');
-    expect(draftSection(item, { ...european, material: 's275' }).material).toBe('s275');
-    expect(draftSection(american, european).material).toBe('a992');
-    expect(draftSection(inch, european).material).toBe('dfl-no2');
+    expect(draftSection(item, { ...european, material: 's275' }, MATERIAL_CHOICES).material).toBe('s275');
+    expect(draftSection(american, european, MATERIAL_CHOICES).material).toBe('a992');
+    expect(draftSection(inch, european, MATERIAL_CHOICES).material).toBe('dfl-no2');
   });
 
   test('begin near the section in use, and are looked for everywhere once something is said', () => {
-    const current = draftSection(item, null);
+    const current = draftSection(item, null, MATERIAL_CHOICES);
     const all = { q: '', depthMax: null, massMax: null };
     expect(sectionQuery(all, null)).toBeNull();
     expect(sectionQuery(all, current)).toMatchObject({ table: 'european-i', mass_min: String(42.2 * 0.75) });

@@ -4,7 +4,7 @@ import type { CombinationSet } from '@/engine/combination';
 import type { Redundant } from '@/engine/model';
 import type { UnitSystemName } from '@/engine/quantity';
 import type { Template } from '@/engine/template';
-import { choiceOf, type MaterialChoice, materialKey } from '@/features/material/material';
+import { choiceOf, type MaterialChoice, materialKey, readMaterialKey } from '@/features/material/material';
 import type { SectionValues } from '@/features/section/resolve';
 import type { RowOrigin } from '@/features/section/section';
 import { type Raw, toParameters, toRaw } from '@/features/template/raw';
@@ -92,6 +92,20 @@ export const toDraft = (
   patternsReason: member.patterns_reason,
   redundants: member.redundants,
 });
+
+/** The draft after it was saved: what the server named by its set is named so here, and is no difference. */
+export function asSaved(draft: Draft, saved: MemberView): Draft {
+  const { section } = draft;
+  const { section: kept } = saved;
+  return {
+    ...draft,
+    combinations: draft.combinations || (saved.combinations?.slug ?? ''),
+    section:
+      section && kept && readMaterialKey(section.material).id === kept.material
+        ? { ...section, material: keyOf(saved, kept) }
+        : section,
+  };
+}
 
 /** The member with its parameters as its fields write them, a load by its groups, so that only a change is a difference. */
 export const inFields = (member: MemberView, template: Template, system: UnitSystemName): MemberView => ({

@@ -1,8 +1,8 @@
 import { and, asc, count, desc, eq, gte, inArray, lte, type SQL, sql } from 'drizzle-orm';
 import type { Tx } from '@/db/client';
-import { revision } from '@/db/schema/library';
+import { document, revision } from '@/db/schema/library';
 import { section } from '@/db/schema/section';
-import { designationParts } from '@/engine/section';
+import { designationKey, designationParts } from '@/engine/section';
 import {
   LIGHTEST,
   nearestDesignations,
@@ -36,17 +36,13 @@ const FIELDS: Record<SectionField, SQL> = {
   r_minor_cm: sql`sqrt(${section.iMinorCm4} / ${section.areaCm2})`,
 };
 
-const familyOf = (key: SQL): SQL => sql`substring(${key} from '^[a-z]*') collate "C"`;
-const sizesTextOf = (key: SQL): SQL => sql`regexp_replace(${key}, '^[a-z]*', '')`;
-const sizesOf = (key: SQL): SQL => sql`string_to_array(${sizesTextOf(key)}, 'x')::float8[]`;
-
 const KEY = sql`${section.designationKey}`;
-const FAMILY = familyOf(KEY);
-const SIZES_TEXT = sizesTextOf(KEY);
+const FAMILY = sql`${section.family} collate "C"`;
+const SIZES = sql`${section.sizes}`;
+const SIZES_TEXT = sql`substr(${KEY}, length(${section.family}) + 1)`;
 
 /** designationRank of the engine, as the database finds it. Null where the designation does not answer. */
 function rankOf(q: string): SQL<number | null> {
-  if (q === '') return sql`1::int`; // a bare 1 in ORDER BY means the first column
   const { family, sizes } = designationParts(q);
   if (family === '' && sizes.length === 0) return sql`null::int`;
   const together = sizes.join('x');
@@ -117,39 +113,77 @@ export interface Found {
   readonly total: number;
 }
 
-/** The order as one tuple that only rises, or for a descending designation only falls; nulls are the last. */
-function orderOf({ q, sort }: SectionQuery, rank: SQL) {
+/** Fields that no row leaves out: an index gives their order either way. */
+const ALWAYS: ReadonlySet<SectionField> = new Set([
+  'depth_mm',
+  'width_mm',
+  'mass_kg_m',
+  'area_cm2',
+  'i_major_cm4',
+  'i_minor_cm4',
+  'w_el_cm3',
+]);
+
+interface Order {
+  /** How well the designation answers; null where none is asked for. */
+  readonly grade: SQL<number> | null;
+  /** What is sorted by; null where it is the designation. */
+  readonly value: SQL<number | null> | null;
+  readonly descending: boolean;
+  readonly isAlwaysThere: boolean;
+}
+
+function orderOf({ q, sort }: SectionQuery, rank: SQL<number | null>): Order {
   const { field, descending } = sort ?? LIGHTEST;
-  const falls = field === 'designation' && descending;
-  const grade = q === '' || !sort ? rank : sql`least(${rank}, 1)`;
-  const value =
-    field === 'designation'
-      ? sql`0::float8`
-      : sql`coalesce(${descending ? sql`-` : sql``}${FIELDS[field]}, 'Infinity')`;
   return {
-    grade: falls ? sql<number>`-(${grade})` : sql<number>`${grade}`,
-    value: sql<number>`${value}`.mapWith(Number),
-    falls,
+    grade: q === '' ? null : sort ? sql<number>`least(${rank}, 1)` : sql<number>`${rank}`,
+    value: field === 'designation' ? null : sql<number | null>`${FIELDS[field]}`,
+    descending,
+    isAlwaysThere: field === 'designation' || ALWAYS.has(field),
   };
 }
 
-function pageOf(tx: Tx, where: SQL | undefined, order: ReturnType<typeof orderOf>, limit: number) {
-  const turn = order.falls ? desc : asc;
+/** What a table does not give stands last either way. Ties go by designation and table. */
+function turnsOf({ grade, value, descending, isAlwaysThere }: Order): SQL[] {
+  const turn = descending ? desc : asc;
+  const byName = [FAMILY, SIZES, sql`${section.tableSlug}`];
+  if (value === null) return [...(grade ? [asc(grade)] : []), ...byName.map((one) => turn(one))];
+  const byValue = isAlwaysThere ? turn(value) : sql`${turn(value)} nulls last`;
+  return [...(grade ? [asc(grade)] : []), byValue, ...byName.map((one) => asc(one))];
+}
+
+/** Of the rows in an order, those after a place: first by its grade, then by its value, then by name. */
+function after(place: SectionPlace, { grade, value, descending }: Order): SQL {
+  const [placeGrade, placeValue, key, table] = place;
+  const at = sql`${key}::text`;
+  const named = sql`(${FAMILY}, ${SIZES}, ${section.tableSlug})`;
+  const placeNamed = sql`(substring(${at} from '^[a-z]*') collate "C", string_to_array(regexp_replace(${at}, '^[a-z]*', ''), 'x')::float8[], ${table}::text)`;
+  const inGrade =
+    value === null
+      ? sql`${named} ${descending ? sql`<` : sql`>`} ${placeNamed}`
+      : afterValue(value, placeValue, descending, sql`${named} > ${placeNamed}`);
+  if (grade === null) return inGrade;
+  return sql`(${grade} > ${placeGrade}::int or (${grade} = ${placeGrade}::int and (${inGrade})))`;
+}
+
+function afterValue(value: SQL, placeValue: number | null, descending: boolean, afterName: SQL): SQL {
+  if (placeValue === null) return sql`${value} is null and ${afterName}`;
+  const at = sql`${placeValue}::float8`;
+  // Said twice, since an index is entered by the bound alone.
+  const beyond = descending ? sql`${value} < ${at}` : sql`${value} > ${at}`;
+  const within = descending ? sql`${value} <= ${at}` : sql`${value} >= ${at}`;
+  return sql`((${within} and (${beyond} or ${afterName})) or ${value} is null)`;
+}
+
+function pageOf(tx: Tx, where: SQL | undefined, order: Order, limit: number) {
   return selectRows(tx, {
-    grade: order.grade.as('grade'),
-    value: order.value.as('value'),
+    grade: (order.grade ?? sql<number>`1`).as('grade'),
+    value: (order.value ?? sql<number | null>`0::float8`).as('value'),
     key: sql<string>`${KEY}`.as('key'),
   })
     .where(where)
-    .orderBy(turn(order.grade), turn(order.value), turn(FAMILY), turn(sizesOf(KEY)), turn(section.tableSlug))
+    .orderBy(...turnsOf(order))
     .limit(limit);
-}
-
-function after(place: SectionPlace, { grade, value, falls }: ReturnType<typeof orderOf>): SQL {
-  const [placeGrade, placeValue, key, table] = place;
-  const at = sql`${key}::text`;
-  return sql`(${grade}, ${value}, ${FAMILY}, ${sizesOf(KEY)}, ${section.tableSlug}) ${falls ? sql`<` : sql`>`}
-    (${placeGrade}::int, ${placeValue ?? 'Infinity'}::float8, ${familyOf(at)}, ${sizesOf(at)}, ${table}::text)`;
 }
 
 interface Page {
@@ -165,12 +199,36 @@ export async function searchRows(
   page: Page,
 ): Promise<Found> {
   const found = await namedRows(tx, practiceId, query, page);
-  if (found.total > 0 || query.q === '' || (await isCalled(tx, practiceId, rankOf(query.q)))) return found;
-  return nearest(tx, issuedRows(practiceId, query), query.q, page.limit);
+  if (found.total > 0 || query.q === '' || (await isCalled(tx, practiceId, query.q))) return found;
+  return nearest(tx, await issuedRows(tx, practiceId, query), query.q, page.limit);
 }
 
-const issuedRows = (practiceId: string, query: SectionQuery): SQL | undefined =>
-  and(eq(section.practiceId, practiceId), eq(revision.state, 'issued'), ...conditions(query));
+/** Of the issued editions, by their ids: of two tables' worth of statistics the planner guesses badly. */
+async function issuedRows(tx: Tx, practiceId: string, query?: SectionQuery): Promise<SQL | undefined> {
+  const editions = await tx
+    .select({ id: revision.id })
+    .from(revision)
+    .innerJoin(
+      document,
+      and(eq(document.practiceId, revision.practiceId), eq(document.id, revision.documentId)),
+    )
+    .where(
+      and(
+        eq(revision.practiceId, practiceId),
+        eq(revision.state, 'issued'),
+        eq(document.kind, 'section-table'),
+        query?.table ? eq(document.slug, query.table) : undefined,
+      ),
+    );
+  return and(
+    eq(section.practiceId, practiceId),
+    inArray(
+      section.revisionId,
+      editions.map(({ id }) => id),
+    ),
+    ...(query ? conditions(query) : []),
+  );
+}
 
 /** The same, and none where no section is called so. */
 export async function namedRows(
@@ -181,45 +239,50 @@ export async function namedRows(
 ): Promise<Found> {
   const rank = rankOf(query.q);
   const order = orderOf(query, rank);
-  const where = and(issuedRows(practiceId, query), query.q === '' ? undefined : sql`${rank} is not null`);
+  const issued = await issuedRows(tx, practiceId, query);
+  const where = and(issued, query.q === '' ? undefined : sql`${rank} is not null`);
   const [[counted], rows] = await Promise.all([
-    tx
-      .select({ total: count() })
-      .from(section)
-      .innerJoin(
-        revision,
-        and(eq(revision.practiceId, section.practiceId), eq(revision.id, section.revisionId)),
-      )
-      .where(where),
+    tx.select({ total: count() }).from(section).where(where),
     pageOf(tx, place ? and(where, after(place, order)) : where, order, limit + 1),
   ]);
   const shown = rows.slice(0, limit);
   const last = shown.at(-1);
-  const next =
-    rows.length > limit && last
-      ? ([last.grade, Number.isFinite(last.value) ? last.value : null, last.key, last.table] as const)
-      : null;
   return {
     items: shown.map(({ grade: _g, value: _v, key: _k, ...row }) => toItem(row)),
-    next,
+    next: rows.length > limit && last ? ([last.grade, last.value, last.key, last.table] as const) : null,
     total: counted?.total ?? 0,
   };
 }
 
 /** Whether any section is called so, whatever else is asked of it. */
-async function isCalled(tx: Tx, practiceId: string, rank: SQL): Promise<boolean> {
-  const [found] = await selectRows(tx, {})
-    .where(and(eq(section.practiceId, practiceId), eq(revision.state, 'issued'), sql`${rank} is not null`))
+async function isCalled(tx: Tx, practiceId: string, q: string): Promise<boolean> {
+  const [found] = await tx
+    .select({ id: section.id })
+    .from(section)
+    .where(and(await issuedRows(tx, practiceId), sql`${rankOf(q)} is not null`))
     .limit(1);
   return found !== undefined;
 }
 
+/** Most alike by the letters to be changed, among which the nearest are looked for. */
+const CANDIDATES = 300;
+/** Letters that a key is compared by. */
+const LONGEST = 40;
+
 /** Nobody is left with nothing for a slip of the finger. */
 async function nearest(tx: Tx, met: SQL | undefined, q: string, limit: number): Promise<Found> {
-  const order = orderOf({ q: '', table: null, shapes: null, ranges: [], sort: null }, sql`1::int`);
-  const all = await selectRows(tx, {})
+  const asked = designationKey(q).slice(0, LONGEST);
+  const near = await tx
+    .select({ id: section.id, designation: section.designation })
+    .from(section)
     .where(met)
-    .orderBy(asc(order.value), asc(FAMILY), asc(sizesOf(KEY)), asc(section.tableSlug));
-  const items = nearestDesignations(q, all).slice(0, limit).map(toItem);
+    .orderBy(sql`levenshtein(left(${KEY}, ${LONGEST}), ${asked})`, asc(section.massKgM), FAMILY, SIZES)
+    .limit(CANDIDATES);
+  const ids = nearestDesignations(q, near)
+    .slice(0, limit)
+    .map(({ id }) => id);
+  const rows = ids.length === 0 ? [] : await selectRows(tx, {}).where(and(met, inArray(section.id, ids)));
+  const byId = new Map(rows.map((row) => [row.id, toItem(row)]));
+  const items = ids.flatMap((id) => byId.get(id) ?? []);
   return { items, next: null, total: items.length };
 }

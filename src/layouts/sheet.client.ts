@@ -1,3 +1,4 @@
+import { fromHere } from '@/components/ui/from-here';
 import { createKeyReader, takesTyping } from '@/components/ui/keys';
 import { takeLanding } from '@/components/ui/landing';
 import { keysAreOn } from '@/components/ui/use-keys';
@@ -82,7 +83,14 @@ function closeMenusOnLeaving() {
   }
 }
 
+function sayWhereFrom() {
+  for (const link of document.querySelectorAll<HTMLAnchorElement>('a[data-from-here]'))
+    for (const event of ['click', 'auxclick'])
+      link.addEventListener(event, () => link.setAttribute('href', fromHere(link)));
+}
+
 listenForKeys();
+sayWhereFrom();
 listenForTheme();
 watchTitleBlock();
 closeMenusOnLeaving();

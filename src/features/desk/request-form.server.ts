@@ -1,5 +1,6 @@
 import { AnswerRequest, NewRequest } from '@/features/review/request';
 import { answerRequest, raiseRequest } from '@/features/review/request.server';
+import { readScreen } from '@/features/review/request-screen.server';
 import { DOCUMENT_KINDS } from '@/features/review/review';
 import type { Actor } from '@/features/review/rows.server';
 import { invalid } from '@/lib/app-error';
@@ -33,7 +34,7 @@ export const takeNewRequest = (actor: Actor, form: FormData): Promise<Outcome> =
       kind: textOf(form, 'kind'),
       title: textOf(form, 'title'),
       body: textOf(form, 'body'),
-      context: from ? { address: localPath(from) } : {},
+      context: from ? await readScreen(actor, localPath(from)) : {},
       document: documentOf(form),
     });
     if (!reading.ok) throw invalid(reading.faults);

@@ -11,7 +11,7 @@ export const REQUEST_MOVES: Readonly<Record<RequestState, readonly RequestState[
   done: ['open'],
 };
 
-const LARGEST_CONTEXT = 20_000; // characters of its JSON
+export const LARGEST_CONTEXT = 20_000; // characters of its JSON
 
 const documentRef = z.strictObject({ kind: z.enum(DOCUMENT_KINDS), slug: z.string().min(1).max(80) });
 

@@ -1,5 +1,6 @@
 /** The search dialog at work: it asks while one types, lists what answers, and is worked by keys alone. */
 
+import { fromHere } from '@/components/ui/from-here';
 import { goToZone } from '@/components/ui/zone';
 import {
   type Command,
@@ -41,7 +42,7 @@ function commandsOf(dialog: HTMLElement): Command[] {
   return [
     ...[...places].map((place) => ({
       label: place.textContent.trim(),
-      href: place.getAttribute('href') ?? '/',
+      href: fromHere(place),
       keys: '',
     })),
     ...zones,

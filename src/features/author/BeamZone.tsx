@@ -67,8 +67,9 @@ function Supports() {
 
 function SupportFields({ at }: { readonly at: Pointer }) {
   const kind = useTextAt(`${at}/kind`);
-  const isFreeUp = kind === 'free' || kind === 'guided';
-  const isFreeTurn = kind !== 'fixed' && kind !== 'guided';
+  // A spring that the kind does not take stays in view, to be taken out.
+  const isFreeUp = useTextAt(`${at}/kv`) !== '' || kind === 'free' || kind === 'guided';
+  const isFreeTurn = useTextAt(`${at}/kr`) !== '' || (kind !== 'fixed' && kind !== 'guided');
   return (
     <>
       <Row>

@@ -3,8 +3,8 @@ import { DIMENSION_NAMES, DIMENSION_WORDS, type DimensionName } from '@/engine/q
 import { choicesOf, sizedBy } from './choices';
 import { DraftSteps } from './draft-steps';
 import { type Pointer, textAt } from './edit';
-import { choice, ofDimension, pointLoadRows } from './entries';
-import { ChoiceAt, CountAt, LongTextAt, QuantityAt, TextAt } from './fields';
+import { choice, groupColumn, ofDimension, pointLoadRows } from './entries';
+import { ChoiceAt, CountAt, LongTextAt, QuantityAt, TextAt, useReadOnly } from './fields';
 import { Part, Parts, Row } from './Part';
 import { RowFields } from './StatedRows';
 import { SymbolAt } from './SymbolAt';
@@ -158,6 +158,7 @@ function QuantityFields({ at }: { readonly at: Pointer }) {
 
 function ChoiceFields({ at }: { readonly at: Pointer }) {
   const store = useDraft();
+  const isReadOnly = useReadOnly();
   const options = useListAt(`${at}/options`);
   const values = options.map((option) => textAt(option, '/value'));
   return (
@@ -174,7 +175,7 @@ function ChoiceFields({ at }: { readonly at: Pointer }) {
               help="Small letters, digits and hyphens."
             />
             <TextAt at={`${place}/name`} label="Name" maxLength={60} />
-            <div className="md:pt-20">
+            <div className="md:pt-20" hidden={isReadOnly}>
               <Button
                 tone="text"
                 aria-label={`Remove the value ${textAt(option, '/value')}`}
@@ -189,18 +190,20 @@ function ChoiceFields({ at }: { readonly at: Pointer }) {
       })}
       <div className="flex flex-wrap items-end gap-12">
         <ChoiceAt at={`${at}/default`} label="Default" choices={choicesOf(values)} />
-        <Button
-          size="small"
-          onClick={() =>
-            store.edit({
-              do: 'insert',
-              at: `${at}/options/-`,
-              value: { value: `value-${options.length + 1}`, name: '' },
-            })
-          }
-        >
-          Add a value
-        </Button>
+        {!isReadOnly && (
+          <Button
+            size="small"
+            onClick={() =>
+              store.edit({
+                do: 'insert',
+                at: `${at}/options/-`,
+                value: { value: `value-${options.length + 1}`, name: '' },
+              })
+            }
+          >
+            Add a value
+          </Button>
+        )}
       </div>
     </>
   );
@@ -208,6 +211,7 @@ function ChoiceFields({ at }: { readonly at: Pointer }) {
 
 function RowsFields({ at }: { readonly at: Pointer }) {
   const store = useDraft();
+  const isReadOnly = useReadOnly();
   const columns = useListAt(`${at}/columns`);
   const add = (value: (symbol: string) => unknown, symbol: string) => {
     const steps = new DraftSteps(store.document);
@@ -227,7 +231,7 @@ function RowsFields({ at }: { readonly at: Pointer }) {
           <fieldset key={index} className="grid gap-12 border-t border-rule pt-8">
             <legend className="caps">Column {index + 1}</legend>
             <ParameterFields at={place} />
-            <div>
+            <div hidden={isReadOnly}>
               <Button
                 size="small"
                 aria-label={`Remove column ${textAt(column, '/symbol')}`}
@@ -243,10 +247,15 @@ function RowsFields({ at }: { readonly at: Pointer }) {
         <legend className="caps">Rows at the start</legend>
         <RowFields at={`${at}/default`} columns={columns} />
       </fieldset>
-      <div className="flex flex-wrap gap-8">
+      <div className="flex flex-wrap gap-8" hidden={isReadOnly}>
         <Button size="small" onClick={() => add((symbol) => ofDimension(symbol, 'force'), 'c')}>
           Add a column
         </Button>
+        {!columns.some((column) => textAt(column, '/kind') === 'group') && (
+          <Button size="small" onClick={() => add(groupColumn, 'g')}>
+            Add the load group of a row
+          </Button>
+        )}
       </div>
     </>
   );

@@ -2,7 +2,7 @@ import { Button } from '@/components/ui/Button';
 import { freshId } from './add';
 import { SEVERITY_CHOICES } from './choices';
 import { type Pointer, textAt } from './edit';
-import { ChoiceAt, ExpressionAt, LongTextAt, QuantityAt, TextAt } from './fields';
+import { ChoiceAt, ExpressionAt, LongTextAt, QuantityAt, TextAt, useReadOnly } from './fields';
 import { RepeatAt } from './LoadZone';
 import { Row } from './Part';
 import { PartList } from './PartList';
@@ -103,6 +103,7 @@ function RuleFields({ at }: { readonly at: Pointer }) {
 /** A figure that is shown beside the rule, such as a/L. */
 function ShownFigure({ at }: { readonly at: Pointer }) {
   const store = useDraft();
+  const isReadOnly = useReadOnly();
   const shown = useTextAt(`${at}/shown/expression`);
   const tex = useTextAt(`${at}/shown/tex`);
   return (
@@ -112,7 +113,7 @@ function ShownFigure({ at }: { readonly at: Pointer }) {
         {(shown !== '' || tex !== '') && (
           <>
             <TextAt at={`${at}/shown/tex`} label="Written as" help="As TeX: a/L." />
-            <div className="self-end">
+            <div className="self-end" hidden={isReadOnly}>
               <Button size="small" onClick={() => store.edit({ do: 'remove', at: `${at}/shown` })}>
                 Show no figure
               </Button>

@@ -1,11 +1,11 @@
 import { ChoiceField, Field } from '@/components/ui/Field';
 import { DIMENSION_NAMES, readQuantity } from '@/engine/quantity';
 import type { Edit, Pointer } from './edit';
-import { listAt, textAt, valueAt } from './edit';
+import { listAt, textAt } from './edit';
 import { useReadOnly } from './fields';
 import { StatedRows } from './StatedRows';
 import { SymbolLabel } from './SymbolLabel';
-import { useDraft, useFaultAt, useListAt, useTextAt } from './use-editor';
+import { useAt, useDraft, useFaultAt, useListAt, useTextAt } from './use-editor';
 
 /** Values of the parameters by symbol; one that is left empty is at its default. */
 export function StatedFields({ at }: { readonly at: Pointer }) {
@@ -76,9 +76,10 @@ function StatedField({ at, parameter }: { readonly at: Pointer; readonly paramet
 /** Values of what is no parameter any more: to be taken out. */
 function Strangers({ at, known }: { readonly at: Pointer; readonly known: readonly string[] }) {
   const store = useDraft();
-  const stated = Object(valueAt(store.document, at));
+  const isReadOnly = useReadOnly();
+  const stated = Object(useAt(at));
   const strangers = Object.keys(stated).filter((symbol) => !known.includes(symbol));
-  if (strangers.length === 0) return null;
+  if (strangers.length === 0 || isReadOnly) return null;
   return (
     <p role="alert" className="text-note font-semibold text-error">
       There is no parameter {strangers.join(', ')} any more.{' '}

@@ -27,7 +27,7 @@ export function SymbolAt({ at }: { readonly at: Pointer }) {
       autoComplete="off"
       spellCheck={false}
       readOnly={useReadOnly()}
-      help="Changed here, it is changed in every expression."
+      help="Changed here, it is changed in every expression; formulas in TeX are yours to change."
       error={useFaultAt(`${at}/symbol`)}
       value={typed}
       onChange={(event) => setTyped(event.target.value)}

@@ -152,6 +152,16 @@ export const choice = (symbol: string) => ({
   default: 'one',
 });
 
+/** The load group that a row of a list belongs to. */
+export const groupColumn = (symbol: string) => ({
+  kind: 'group' as const,
+  symbol,
+  tex: texOf(symbol),
+  name: 'Group',
+  help: 'The load group of this row.',
+  default: 'Q',
+});
+
 /** A list of point loads: where, how large, and of which group. */
 export const pointLoadRows = (symbol: string, x: string, load: string, group: string) => ({
   kind: 'rows' as const,
@@ -162,14 +172,7 @@ export const pointLoadRows = (symbol: string, x: string, load: string, group: st
   columns: [
     quantity(x, { ...PLACE, name: 'Place', help: 'From the left end.' }),
     quantity(load, POINT),
-    {
-      kind: 'group' as const,
-      symbol: group,
-      tex: texOf(group),
-      name: 'Group',
-      help: 'The load group of this row.',
-      default: 'Q',
-    },
+    groupColumn(group),
   ],
   least: 1,
   most: 12,

@@ -1,6 +1,7 @@
 import { type ComponentType, memo, useDeferredValue, useEffect, useRef, useState } from 'react';
 import { takesTyping } from '@/components/ui/keys';
 import { ZoneHeading } from '@/components/ui/ZoneHeading';
+import { paths } from '@/paths';
 import { type Autosave, startAutosave } from './autosave.api';
 import { BeamZone } from './BeamZone';
 import { ChangeZone } from './ChangeZone';
@@ -54,6 +55,11 @@ export function DraftEditor({ data }: { readonly data: DraftPageData }) {
             </ZoneHeading>
             <FaultZone />
             <UndoButtons />
+            <p className="mt-10">
+              <a className="link" href={paths.helpPage('authoring')}>
+                How a template is written
+              </a>
+            </p>
           </section>
           <div className="mt-auto">
             <DraftBlock data={data} autosave={autosave} versionNow={() => store.snapshot.version} />

@@ -24,7 +24,7 @@ export const RequestScreen = z.object({
 export type RequestScreen = z.output<typeof RequestScreen>;
 
 /** A page by its address: which template or member it shows. */
-export type Screen =
+type Screen =
   | { readonly kind: 'template'; readonly slug: string; readonly number: number | undefined }
   | { readonly kind: 'member'; readonly job: string; readonly mark: string }
   | { readonly kind: 'other' };

@@ -114,7 +114,7 @@ export const swaps = (word: string): string[] =>
     (_, at) => word.slice(0, at) + word.charAt(at + 1) + word.charAt(at) + word.slice(at + 2),
   );
 
-export type Mark = readonly [from: number, to: number];
+type Mark = readonly [from: number, to: number];
 const WORD = /[\p{L}\p{N}\p{M}]+/gu;
 
 /** The stretches of a text that answer what was asked: beginnings of its words, and it whole as a mark. */

@@ -224,6 +224,9 @@ describe('combinations of a member', () => {
       422,
       { pointer: '/combinations', code: 'does_not_fit' },
     ]);
+    const unknown = { ...MEMBER, mark: 'C2', categories: { Q: 'z' } };
+    const refused = await post('/api/v1/jobs/S-1/members', unknown, 'engineer');
+    expect(refused.json.errors).toMatchObject([{ pointer: '/categories/Q', code: 'unknown_category' }]);
     const none = await post('/api/v1/jobs/S-1/members', { ...json, combinations: 'none' }, 'engineer');
     expect(none.json.errors[0]).toMatchObject({ pointer: '/combinations', code: 'unknown_combinations' });
   });

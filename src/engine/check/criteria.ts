@@ -9,6 +9,7 @@ import {
   type Pattern,
   serviceOf,
   strengthOf,
+  unknownCategories,
 } from '../combination/index';
 
 const factors = z.partialRecord(z.enum(LOAD_GROUPS), z.number());
@@ -141,12 +142,10 @@ export function unfitting(
             },
           ],
     ),
-    ...LOAD_GROUPS.flatMap((group) => {
-      const id = categories[group];
-      return id === undefined || set.categories[group]?.some((one) => one.id === id)
-        ? []
-        : [{ path: ['categories', group], message: `${set.reference} has no category “${id}” of ${group}.` }];
-    }),
+    ...unknownCategories(set, categories).map((group) => ({
+      path: ['categories', group],
+      message: `${set.reference} has no category “${categories[group]}” of ${group}.`,
+    })),
   ];
 }
 

@@ -24,5 +24,6 @@ export {
   type SetFactor,
   serviceOf,
   strengthOf,
+  unknownCategories,
 } from './set';
 export { type ArrangementNamer, arrangementNamer } from './words';

@@ -79,6 +79,13 @@ export function categoryOf(
   return known.find(({ id }) => id === chosen[group]) ?? known[0];
 }
 
+/** Groups of which a category is chosen that the set does not know. */
+export const unknownCategories = (set: CombinationSet, chosen: Categories): LoadGroup[] =>
+  LOAD_GROUPS.filter((group) => {
+    const id = chosen[group];
+    return id !== undefined && !set.categories[group]?.some((one) => one.id === id);
+  });
+
 /** Factors are decimals: of 1.5 · 0.7 the product of two doubles is 1.0499999999999998. */
 const decimal = (value: number): number => Number(value.toPrecision(12));
 

@@ -62,10 +62,10 @@ export function BasisFields({ draft, data, faults, onChange }: BasisFieldsProps)
 function chosenCriteria(
   criteria: readonly CriteriaChoice[],
   chosen: string,
-): Pick<Draft, 'criteria' | 'combinations'> {
+): Pick<Draft, 'criteria' | 'combinations' | 'categories'> {
   const document = criteria.find(({ slug }) => slug === chosen)?.document;
   const combinations = document?.schema_version === 2 ? document.combinations.set : '';
-  return { criteria: chosen, combinations };
+  return { criteria: chosen, combinations, categories: {} };
 }
 
 /** Those of the section's kind; by their sets where two have a name in common. */

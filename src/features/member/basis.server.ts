@@ -1,21 +1,37 @@
 /** What a member is judged by: its criteria, and the combinations that these are held against. */
 import type { Tx } from '@/db/client';
 import { unfitting } from '@/engine/check';
+import { unknownCategories } from '@/engine/combination';
 import { type ReadSet, readSet } from '@/features/combination/combination.server';
 import { asCriteria } from '@/features/criteria/criteria.server';
 import { findRevision } from '@/features/review/library.server';
 import { holdForUse } from '@/features/review/pin.server';
+import { invalid } from '@/lib/app-error';
 import type { SaveMember } from './member';
 import type { Pins } from './pins.server';
 import { movedTo, refused, withdrawn } from './revision.server';
 
 type Basis = Pick<Pins, 'criteria' | 'combinations'>;
-type Asked = Pick<SaveMember, 'criteria' | 'combinations' | 'criteria_revision' | 'combinations_revision'>;
+type Asked = Pick<
+  SaveMember,
+  'criteria' | 'combinations' | 'categories' | 'criteria_revision' | 'combinations_revision'
+>;
 
 /** Criteria and combinations as they are named: what is pinned stays unless it is moved or another is named. */
 export async function placeBasis(tx: Tx, practiceId: string, asked: Asked, pinned: Basis): Promise<Basis> {
   const criteria = await placeCriteria(tx, practiceId, asked, pinned.criteria);
-  return { criteria, combinations: await placeCombinations(tx, practiceId, asked, criteria, pinned) };
+  const combinations = await placeCombinations(tx, practiceId, asked, criteria, pinned);
+  if (combinations) refuseUnknown(combinations, asked.categories);
+  return { criteria, combinations };
+}
+
+function refuseUnknown({ reference, document }: ReadSet, chosen: Asked['categories']): void {
+  const faults = unknownCategories(document, chosen).map((group) => ({
+    pointer: `/categories/${group}`,
+    code: 'unknown_category',
+    message: `${reference} has no category “${chosen[group]}” of ${group}. Choose one of ${(document.categories[group] ?? []).map(({ id }) => id).join(', ') || 'none'}.`,
+  }));
+  if (faults.length > 0) throw invalid(faults);
 }
 
 async function placeCriteria(

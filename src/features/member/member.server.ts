@@ -131,11 +131,12 @@ export function tryMember(actor: Actor, number: string, mark: string, body: TryM
     const {
       criteria = pinned.criteria?.slug ?? null,
       combinations = null,
+      categories = row.settings.categories,
       section = choiceOf(pinned.section),
     } = body;
     const pins = {
       template: await moveTemplate(tx, practiceId, pinned.template, body.template_revision),
-      ...(await placeBasis(tx, practiceId, { ...body, criteria, combinations }, pinned)),
+      ...(await placeBasis(tx, practiceId, { ...body, criteria, combinations, categories }, pinned)),
       section: await placeSection(tx, practiceId, section, pinned.section, body),
     };
     const given = {
@@ -145,7 +146,7 @@ export function tryMember(actor: Actor, number: string, mark: string, body: TryM
       }),
       self_weight: body.self_weight ?? row.settings.self_weight,
       patterns: body.patterns ?? row.settings.patterns,
-      categories: body.categories ?? row.settings.categories,
+      categories,
       redundants: body.redundants === undefined ? row.settings.redundants : body.redundants,
     };
     return assessMember(pins, given, job.unitSystem);

@@ -110,3 +110,28 @@ describe('an edition of a section table', () => {
     expect(await refusal(write)).toBe('PL001');
   });
 });
+
+test('going back to a former edition makes its rows the next one, which a second person issues', async () => {
+  const [writer, reviewer] = await foundPractice(['librarian'], ['checker']);
+  const pair = { author: writer, reviewer };
+  const first = await issueSections(pair, SLUG);
+  await issueSections(pair, SLUG);
+  const [ours, theirs] = await Promise.all([
+    signInAs(writer.email, PASSWORD),
+    signInAs(reviewer.email, PASSWORD),
+  ]);
+  const at = (number: number) => `/api/v1/library/section-table/${SLUG}/revisions/${number}`;
+  const json = { reason: 'Edition 2 has the axes exchanged.', consequence: 'safety' };
+  expect((await ask('POST', `${at(1)}/restore`, { cookie: theirs, json })).status).toBe(403);
+  expect((await ask('POST', `${at(2)}/restore`, { cookie: ours, json })).status).toBe(409);
+  const made = await ask('POST', `${at(1)}/restore`, { cookie: ours, json });
+  expect([made.status, made.json]).toEqual([201, { number: 3, state: 'in_review' }]);
+  expect((await ask('POST', `${at(3)}/issue`, { cookie: ours, json: {} })).status).toBe(403);
+  expect((await ask('POST', `${at(3)}/issue`, { cookie: theirs, json: {} })).status).toBe(200);
+  const { counts } = (await ask('GET', `/api/v1/sections/${SLUG}/changes?from=1&to=3`, { cookie: ours }))
+    .json;
+  expect(counts).toEqual({ changed: 0, added: 0, removed: 0, same: rows.length });
+  const rowsOf = (revisionId: string) =>
+    withPractice(writer, (tx) => storedRowsHash(tx, writer.practiceId, revisionId));
+  expect((await rowsOf(first.revisionId)).count).toBe(rows.length);
+});

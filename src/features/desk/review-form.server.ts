@@ -6,6 +6,8 @@ import type { RevisionKey } from '@/features/review/draft';
 import { WithdrawStep } from '@/features/review/recall';
 import { type StepRequest, takeStepAt } from '@/features/review/review.server';
 import type { Actor } from '@/features/review/rows.server';
+import { Restore } from '@/features/section/edition';
+import { restoreEdition } from '@/features/section/restore.server';
 import { idParam } from '@/http/params';
 import { invalid } from '@/lib/app-error';
 import { type Reading, read } from '@/lib/read';
@@ -43,6 +45,11 @@ export const takeReviewForm = (actor: Actor, key: RevisionKey, form: FormData): 
       case 'weigh':
         await askImpact(actor, key, { from: 0, limit: 1, outcome: undefined });
         return `${here}?done=weigh#impact`;
+      case 'restore': {
+        const said = { reason: textOf(form, 'reason'), consequence: textOf(form, 'consequence') };
+        const { number } = await restoreEdition(actor, key, given(read(Restore, said)));
+        return `${paths.review(key.kind, key.slug, number)}?done=submit`;
+      }
       case 'submit':
       case 'return':
       case 'issue':

@@ -1,4 +1,4 @@
-import { type DragEvent, useRef, useState } from 'react';
+import { type DragEvent, useEffect, useRef, useState } from 'react';
 import { Button } from '@/components/ui/Button';
 import { paths } from '@/paths';
 import { uploadTable } from './imports.api';
@@ -35,6 +35,10 @@ export function Upload() {
   const { sending, problem, send, stop } = useSending();
   const pick = useRef<HTMLInputElement>(null);
   const [isOver, setOver] = useState(false);
+  // biome-ignore lint/correctness/useExhaustiveDependencies: once, for what was chosen before the page was awake
+  useEffect(() => {
+    void send(pick.current?.files?.[0]);
+  }, []);
   function drop(event: DragEvent) {
     event.preventDefault();
     setOver(false);

@@ -19,7 +19,7 @@ import { findImport, holdFree, type ImportRow, ofImport, underWay } from './rows
 import { UNDER_WAY } from './state';
 
 /** Rows that are checked or written, and kept, together: what a crash may lose. */
-const BATCH = 5000;
+const BATCH = 2000;
 /** Milliseconds between two words of progress. */
 const SAY_EVERY = 700;
 

@@ -1,5 +1,5 @@
 import { z } from 'zod';
-import { REVISION_STATES, type RevisionState } from '@/features/review/review';
+import { CONSEQUENCES, REVISION_STATES, type RevisionState } from '@/features/review/review';
 import { type SectionItem, sectionItemSchema } from './section';
 
 /** What an edition's document says of where its rows come from. */
@@ -17,6 +17,17 @@ export const editionDocument = z.object({
   import: z.object({ id: z.uuid(), file: z.string(), sha256: z.string() }).optional(),
   source_document: z.object({ file: z.string(), sha256: z.string() }).optional(),
 });
+
+/** POST …/restore: goes back to a former edition. */
+export const Restore = z.strictObject({
+  reason: z
+    .string()
+    .trim()
+    .min(3, 'Say what is wrong with the edition in force, for whoever reviews this.')
+    .max(1500),
+  consequence: z.enum(CONSEQUENCES),
+});
+export type Restore = z.output<typeof Restore>;
 
 /** An edition of a section table as its title block and its provenance show it. */
 export type EditionView = z.output<typeof editionDocument> & {

@@ -122,7 +122,7 @@ function Parts(props: StageProps) {
         if (!part || !grip) return null;
         return (
           <PartGrip
-            key={`${part.pointer} ${index}`}
+            key={`${part.pointer} ${part.nth}`}
             part={part}
             place={index + 1}
             count={parts.length}

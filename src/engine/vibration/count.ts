@@ -9,17 +9,28 @@ const LARGEST_PART = 3;
 /** In the place of a pivot that is exactly zero: ω is a natural frequency to the last digit carried. */
 const NO_PIVOT = Wide.of(2 ** -300);
 
+/** What the dynamic stiffness matrix tells at ω². */
+export type Count = {
+  readonly omega2: number;
+  /** How many natural frequencies lie below. */
+  readonly below: number;
+  /** ln |det|: with the sign of (−1)^below a smooth function of ω², zero at every natural frequency. */
+  readonly log: number;
+};
+
 /**
  * How many natural frequencies lie below ω, by Wittrick and Williams: the negative pivots of the dynamic stiffness
  * matrix at ω, and those of the parts between held ends. There are none of the latter: a part whose wave number β times
  * its length is below π lies below the first frequency of a pinned part, sin βh = 0, and holding its ends more can only
- * raise that. So the pieces are cut into parts of βh ≤ 3.
+ * raise that. So the pieces are cut into parts of βh ≤ 3 at `largest`, an ω² no smaller: determinants can be compared only
+ * where the parts are the same.
  *
  * Source: W. H. Wittrick, F. W. Williams, "A general algorithm for computing natural frequencies of elastic structures",
  * Quarterly Journal of Mechanics and Applied Mathematics 24 (1971).
  */
-export function frequenciesBelow({ beam, pieces, lumped }: Vibrating, omega2: number): number {
+export function countBelow({ beam, pieces, lumped }: Vibrating, omega2: number, largest: number): Count {
   const matrix = new Indefinite();
+  const hinges = new Set(beam.hinges);
   const supports = new Map(beam.supports.map((support) => [support.at, support]));
   const free = (restraint: Restraint | undefined) => (restraint?.kind === 'rigid' ? null : matrix.unknown());
   const node = (at: number): Node => {
@@ -30,21 +41,31 @@ export function frequenciesBelow({ beam, pieces, lumped }: Vibrating, omega2: nu
     matrix.hold(left, support?.rotation);
     const mass = lumped.get(at);
     if (mass) matrix.add(deflection, deflection, Wide.of(-mass).times(omega2));
-    return { deflection, left, right: beam.hinges.includes(at) ? matrix.unknown() : left };
+    return { deflection, left, right: hinges.has(at) ? matrix.unknown() : left };
   };
   let start = node(0);
+  const known = new Map<string, Wide[][]>();
   for (const piece of pieces) {
-    for (const part of partsOf(piece, omega2)) {
+    for (const part of partsOf(piece, largest)) {
       const end = node(part.to);
       const unknowns = [start.deflection, start.right, end.deflection, end.left];
-      const stiffness = dynamicStiffness(part, omega2);
+      const stiffness = stiffnessOf(part, omega2, known);
       unknowns.forEach((i, a) => {
         for (let b = 0; b <= a; b++) matrix.add(i, unknowns[b]!, stiffness[a]![b]!);
       });
       start = end;
     }
   }
-  return matrix.negativePivots();
+  return { omega2, ...matrix.eliminate() };
+}
+
+/** Pieces that are alike have one stiffness. */
+function stiffnessOf(piece: Piece, omega2: number, known: Map<string, Wide[][]>): Wide[][] {
+  const { from, to, ei, ga, start, end } = piece;
+  const key = [to - from, ei, ga, start, end].join();
+  const stiffness = known.get(key) ?? dynamicStiffness(piece, omega2);
+  known.set(key, stiffness);
+  return stiffness;
 }
 
 /** The numbers of a point's unknowns; null where it is held. */
@@ -85,11 +106,13 @@ class Indefinite {
   }
 
   /** By Sylvester's law the negative pivots of L D Lᵀ are as many as the negative eigenvalues. Destroys the matrix. */
-  negativePivots(): number {
-    let negative = 0;
+  eliminate(): { below: number; log: number } {
+    let below = 0;
+    let log = 0;
     this.rows.forEach((row, i) => {
       const pivot = row[BAND]!.hi === 0 ? NO_PIVOT : row[BAND]!;
-      if (pivot.hi < 0) negative++;
+      if (pivot.hi < 0) below++;
+      log += Math.log(Math.abs(pivot.hi));
       for (let a = i + 1; a <= Math.min(i + BAND, this.rows.length - 1); a++) {
         const below = this.rows[a]![i - a + BAND]!;
         if (below.hi === 0) continue;
@@ -100,6 +123,6 @@ class Indefinite {
         }
       }
     });
-    return negative;
+    return { below, log };
   }
 }

@@ -1,14 +1,18 @@
-import { prepareBeam } from '../beam/index';
-import type { Load } from '../model/index';
-import { extremes } from '../polynomial/index';
+import type { Extremes } from '../beam/index';
+import type { Beam, Load } from '../model/index';
 import { STANDARD_GRAVITY } from '../quantity/index';
 import type { Vibrating } from './piece';
 
 /** The largest deflection, m, up or down, under the weight of the masses, and where it is. */
 export type Sag = { deflection: number; at: number };
 
-/** Fails as `solveBeam` does. */
-export function sagOf({ beam, pieces, lumped }: Vibrating): Sag {
+/** A solver of beams, such as `prepareBeam`, as far as it is needed here. */
+export type Prepare = (beam: Beam) => {
+  solve(loads: readonly Load[], options: { movements: boolean }): { extremes: Pick<Extremes, 'deflection'> };
+};
+
+/** Fails as `prepare` does. */
+export function sagOf({ beam, pieces, lumped }: Vibrating, prepare: Prepare): Sag {
   const loads: Load[] = [
     ...pieces.map(({ from, to, start, end }) => {
       const [w0, w1] = [start * STANDARD_GRAVITY, end * STANDARD_GRAVITY];
@@ -16,8 +20,8 @@ export function sagOf({ beam, pieces, lumped }: Vibrating): Sag {
     }),
     ...[...lumped].map(([at, mass]) => ({ kind: 'point', at, p: mass * STANDARD_GRAVITY }) as const),
   ];
-  const { diagrams } = prepareBeam({ ...beam, loads }).solve(loads, { movements: false });
-  const { max, min } = extremes(diagrams.deflection);
+  const { extremes } = prepare({ ...beam, loads }).solve(loads, { movements: false });
+  const { max, min } = extremes.deflection;
   const largest = -min.value >= max.value ? min : max;
   return { deflection: Math.abs(largest.value), at: largest.at[0]! };
 }

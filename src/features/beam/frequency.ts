@@ -8,6 +8,7 @@ import {
   totalMass,
 } from '@/engine/vibration/index';
 import { read } from '@/lib/read';
+import { sagSolver } from './choose-solver';
 import { type ReadBeam, readWithRedundants, solveFrequency } from './further';
 import { type Outcome, toOutcome } from './further-answer';
 import { group, LIMITS, position, quantity, solveRequest } from './request';
@@ -77,7 +78,9 @@ export function frequencyDocument(request: FrequencyRequest): Outcome<FrequencyA
     );
     const stretches = own === undefined ? distributed : [...distributed, alongAll(given.length, own)];
     const masses = joinMasses({ distributed: stretches, lumped }, weights.masses);
-    const found = solveFrequency({ beam: given }, masses);
+    const prepare = sagSolver(given);
+    if (!prepare.ok) return prepare;
+    const found = solveFrequency({ beam: given }, masses, prepare.value);
     return found.ok ? { ok: true, value: toAnswer(found.value, masses, weights.leftOut) } : found;
   }
 }

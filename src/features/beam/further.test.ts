@@ -214,6 +214,26 @@ describe('answerMovingLoad', () => {
 });
 
 describe('answerFrequency', () => {
+  test('refuses more pieces than a request may have, and takes hundreds of equal spans', () => {
+    const lumped = Array.from({ length: 450 }, (_, i) => ({ at: (12 * (i + 0.5)) / 450, mass: 3 }));
+    const refused = answerFrequency({ ...plain, mass: 100, lumped });
+    expect(refused).toMatchObject({
+      errors: [
+        {
+          pointer: '',
+          code: 'out_of_range',
+          message: expect.stringContaining('452 pieces, and at most 400'),
+        },
+      ],
+    });
+    const supports = Array.from({ length: 301 }, (_, i) => ({ at: 6 * i, kind: 'pin' }));
+    const many = { length: 1800, ei: 2e7, supports, horizontal: 'ignore', mass: 100 };
+    expect(errorsOf(answerFrequency({ ...many, hinges: [3] }))).toEqual(['/supports out_of_range']);
+    // Equal spans move by turns up and down, each as if it were alone: f = π/2 · √(EI/m)/L².
+    const { frequency } = answerOf(answerFrequency(many));
+    expect(frequency).toBeCloseTo(((Math.PI / 2) * Math.sqrt(2e7 / 100)) / 36, 8);
+  });
+
   test('answers with exactly the fields of its schema, from the weights of the permanent loads', () => {
     const answer = answerOf(answerFrequency({ ...beam, permanent: ['G'] }));
     expect(frequencyAnswer.parse(answer)).toEqual(answer);

@@ -23,7 +23,14 @@ import {
   readBeam,
 } from '@/engine/model/index';
 import { isProven } from '@/engine/proof/index';
-import { type FirstFrequency, firstFrequency, type Masses, readMasses } from '@/engine/vibration/index';
+import {
+  type FirstFrequency,
+  firstFrequency,
+  type Masses,
+  type Prepare,
+  readMasses,
+  vibratingBeam,
+} from '@/engine/vibration/index';
 import { unproven, unsolvable } from './solve';
 
 /** A beam whose redundants, if any are chosen, are in order. */
@@ -112,12 +119,24 @@ export function solveAbsoluteMoment(
   });
 }
 
+/** Pieces that the supports, hinges, steps and masses may cut a beam into whose frequency is asked for: about a second. */
+const MOST_PIECES = 400;
+
 /** The first natural frequency; faults are at `distributed` and `lumped`, and at the top where nothing moves. */
-export function solveFrequency({ beam }: Pick<ReadBeam, 'beam'>, given: Masses): Reading<FirstFrequency> {
+export function solveFrequency(
+  { beam }: Pick<ReadBeam, 'beam'>,
+  given: Masses,
+  prepare?: Prepare,
+): Reading<FirstFrequency> {
   const masses = readMasses(beam, given);
   if (!masses.ok) return masses;
+  const { length } = vibratingBeam(beam, masses.value).pieces;
+  if (length > MOST_PIECES) {
+    const message = `The supports, steps and masses cut the beam into ${length} pieces, and at most ${MOST_PIECES} are possible. Put masses together.`;
+    return { ok: false, faults: [{ path: [], code: 'out_of_range', message }] };
+  }
   return attempt({ beam }, () => {
-    const found = firstFrequency(beam, masses.value);
+    const found = firstFrequency(beam, masses.value, prepare);
     if (found) return { ok: true, value: found };
     const message = 'No mass can move: without one there is no natural frequency. Give the mass of the beam.';
     return { ok: false, faults: [{ path: [], code: 'required', message }] };

@@ -5,9 +5,9 @@ import { type BeamDocument, COINCIDENT } from '@/engine/model/index';
 import { evaluate, magnitude, type Piecewise, pieceAt, pieceCount, settle } from '@/engine/polynomial/index';
 import { read } from '@/lib/read';
 import { solveAnswer } from './answer';
+import { lineSolver } from './choose-solver';
 import { readWithRedundants, solveInfluence } from './further';
 import { type Outcome, quantityAnswer, quantityRequest, toOutcome } from './further-answer';
-import { lineSolver } from './line-solver';
 import { solveRequest } from './request';
 
 /** The body of POST /api/v1/beams/influence: the beam of beams/solve, whose loads have no part in it, and a quantity. */

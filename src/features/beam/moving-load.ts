@@ -2,6 +2,7 @@ import { z } from 'zod';
 import type { Direction } from '@/engine/influence/index';
 import type { Reading } from '@/engine/model/index';
 import { read } from '@/lib/read';
+import { lineSolver } from './choose-solver';
 import {
   jointLines,
   type ReadBeam,
@@ -11,7 +12,6 @@ import {
   type TrainOnLine,
 } from './further';
 import { type Outcome, quantityAnswer, quantityRequest, toOutcome } from './further-answer';
-import { lineSolver } from './line-solver';
 import { position, quantity, solveRequest } from './request';
 
 const MOST_WHEELS = 40;

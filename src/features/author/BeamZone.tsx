@@ -5,6 +5,7 @@ import { type Added, addHinge, addSegment, addSupport } from './add';
 import { SUPPORT_CHOICES } from './choices';
 import { listAt, type Pointer, textAt } from './edit';
 import { ChoiceAt, ExpressionAt, TextAt } from './fields';
+import { openPart } from './open-part';
 import { Row } from './Part';
 import { PartList } from './PartList';
 import { useAdd } from './use-add';
@@ -153,7 +154,7 @@ function Dimensions() {
     const { length } = listAt(store.document, '/beam/dimensions');
     const value = { from: '0', to: textAt(store.document, '/beam/length'), symbol: '' };
     store.edit({ do: 'insert', at: '/beam/dimensions/-', value });
-    store.select(`/beam/dimensions/${length}`);
+    openPart(store, `/beam/dimensions/${length}`);
   };
   return (
     <PartList

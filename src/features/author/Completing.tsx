@@ -27,10 +27,16 @@ export function Completing(props: CompletingProps) {
   const offers = useOffers(props, input);
   return (
     <div className="relative min-w-0">
-      <label htmlFor={id} className="mb-2 flex items-baseline gap-8">
-        <span className="caps">{label}</span>
-        {aside !== undefined && <span className="ml-auto text-note leading-14 text-ink-2">{aside}</span>}
-      </label>
+      <span className="mb-2 flex items-baseline gap-8">
+        <label htmlFor={id} className="caps">
+          {label}
+        </label>
+        {aside !== undefined && (
+          <span id={`${id}-aside`} className="ml-auto text-note leading-14 text-ink-2">
+            {aside}
+          </span>
+        )}
+      </span>
       <input
         ref={input}
         id={id}
@@ -43,7 +49,7 @@ export function Completing(props: CompletingProps) {
         aria-activedescendant={
           offers.list.length > 0 && offers.chosen >= 0 ? `${id}-${offers.chosen}` : undefined
         }
-        aria-describedby={error || help ? `${id}-note` : undefined}
+        aria-describedby={aside === undefined ? `${id}-note` : `${id}-aside ${id}-note`}
         aria-invalid={error ? true : undefined}
         autoComplete="off"
         spellCheck={false}

@@ -2,6 +2,7 @@ import { Button } from '@/components/ui/Button';
 import { DraftSteps } from './draft-steps';
 import { textAt } from './edit';
 import { ExpressionAt, TextAt } from './fields';
+import { openPart } from './open-part';
 import { Part, Parts, Row } from './Part';
 import { texOf } from './rename';
 import { SymbolAt } from './SymbolAt';
@@ -18,7 +19,7 @@ export function DerivedZone() {
     const symbol = steps.fresh('d');
     const at = steps.append(LIST, { symbol, tex: texOf(symbol), name: '', expression: '' });
     store.edit(...steps.edits);
-    store.select(at);
+    openPart(store, at);
   };
   return (
     <Parts

@@ -5,6 +5,7 @@ import { DraftSteps } from './draft-steps';
 import { type Pointer, textAt } from './edit';
 import { choice, groupColumn, ofDimension, pointLoadRows } from './entries';
 import { ChoiceAt, CountAt, LongTextAt, QuantityAt, TextAt, useReadOnly } from './fields';
+import { openPart } from './open-part';
 import { Part, Parts, Row } from './Part';
 import { RowFields } from './StatedRows';
 import { SymbolAt } from './SymbolAt';
@@ -62,7 +63,7 @@ function AddParameter() {
     const steps = new DraftSteps(store.document);
     const at = steps.append(LIST, make(steps));
     store.edit(...steps.edits);
-    store.select(at);
+    openPart(store, at);
   };
   return (
     <>

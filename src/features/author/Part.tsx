@@ -5,6 +5,7 @@ import { removal, reordering, whyKept } from './drawing/change';
 import { isAtDrawing } from './drawing/in-view';
 import { type Pointer, parentOf } from './edit';
 import { useReadOnly } from './fields';
+import { focusPart } from './open-part';
 import { useDraft, useFaultAt, useFaultIn, useIsSelected, useSnapshot } from './use-editor';
 
 interface PartProps {
@@ -78,7 +79,10 @@ function PartActions({ at, name, count }: Pick<PartProps, 'at' | 'name' | 'count
         size="small"
         aria-label={`Remove ${name}`}
         reason={why}
-        onClick={() => store.edit(...removal(store.document, at))}
+        onClick={() => {
+          store.edit(...removal(store.document, at));
+          focusPart(`${list}/${Math.max(0, index - 1)}`);
+        }}
       >
         Remove
       </Button>

@@ -49,12 +49,14 @@ export async function putDraft(
     keepalive,
   }).catch(() => null);
   const json: unknown = await response?.json().catch(() => null);
-  if (response?.ok) return { kind: 'saved', draft: DraftView.parse(json) };
+  if (response?.ok) {
+    const saved = DraftView.safeParse(json);
+    return saved.success ? { kind: 'saved', draft: saved.data } : { kind: 'unreachable' };
+  }
   const reading = problem.safeParse(json);
   if (!response || response.status >= 500 || !reading.success) return { kind: 'unreachable' };
-  const { current } = reading.data;
-  if (response.status === 412 && current !== undefined)
-    return { kind: 'stale', current: DraftView.parse(current) };
+  const current = DraftView.safeParse(reading.data.current);
+  if (response.status === 412 && current.success) return { kind: 'stale', current: current.data };
   return refusal(response.status, reading.data);
 }
 

@@ -102,9 +102,10 @@ class Saver {
     while (this.running) await this.running;
     if (!this.isDirty()) return this.store.snapshot.saving.kind === 'saved';
     if (this.store.snapshot.conflicts.length > 0 || this.store.snapshot.readOnly) return false;
-    this.running = this.save();
+    this.running = this.save().finally(() => {
+      this.running = null;
+    });
     const isSaved = await this.running;
-    this.running = null;
     this.noticed();
     return isSaved && !this.isDirty();
   }

@@ -1,5 +1,6 @@
 import type { Written } from '@/features/review/draft';
 import type { Added } from './add';
+import { openPart } from './open-part';
 import { useDraft } from './use-editor';
 
 /** Adds parts to the draft as one step, and opens the one to go on with. */
@@ -8,6 +9,6 @@ export function useAdd(): (add: (document: Written) => Added) => void {
   return (add) => {
     const { edits, select } = add(store.document);
     store.edit(...edits);
-    store.select(select);
+    openPart(store, select);
   };
 }

@@ -214,6 +214,7 @@ export type Cause =
   | 'column_missing'
   | 'column_unknown'
   | 'column_repeated'
+  | 'axis_letter'
   | 'zero'
   | 'negative'
   | 'not_a_number'
@@ -333,16 +334,10 @@ export type FileIdentity = Pick<FileFacts, 'rowCount' | 'columnSums'> & {
 
 /** `encoding`: the answer to an encoding that had to be asked. */
 export type RecognisedFile = { name: string; size: number; encoding?: Encoding };
-export type Recognise = (head: Uint8Array, file: RecognisedFile) => Recognition;
-/** `head`: the first `RECOGNISED_BYTES` (64 KB) of the file, or all of it. */
+/** What `recognise` is given of a file: so much, or all of it. */
 export const RECOGNISED_BYTES = 64 * 1024;
 export const MOST_BYTES = 50 * 1024 * 1024;
 export const MOST_FINDINGS = 100;
-
-export type AnswerQuestion = (mapping: Mapping, answer: Answer) => Mapping;
-export type OpenQuestions = (mapping: Mapping) => Question['kind'][];
-/** A remembered mapping on a new file; null where the headings are others. */
-export type Remember = (remembered: Mapping, recognised: Mapping) => Mapping | null;
 
 /** Both readings take the file in pieces of any size. A refusal ends the reading. */
 export interface SurveyReading {
@@ -353,8 +348,6 @@ export interface RowReading {
   push(bytes: Uint8Array): CheckBatch;
   finish(): CheckBatch;
 }
-export type RowCheckOptions = { fromRow?: number };
 
-/** Mapping and edits with a fix applied; the same ones where it says nothing new. */
-export type ApplyFix = (state: ImportState, fix: Fix) => ImportState;
+/** What a fix changes. */
 export type ImportState = { mapping: Mapping; edits: readonly Edit[] };

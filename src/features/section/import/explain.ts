@@ -1,9 +1,10 @@
+import { dimensionFaults, sectionProperties } from '@/engine/section';
 import { cellText } from './cells';
 import type { Finding, Fix, NameFacts, NumberField } from './contract';
 import { dropRow, findingOf, isError } from './finding';
 import { hasError, type JudgedRow, judgeLine } from './judge-row';
 import { columnOf, type NumberColumn, type Plan, shifted } from './plan';
-import { SIZES } from './reading';
+import { dimensionsOf, SIZES, type Values } from './reading';
 import { unitSlip } from './slips';
 import type { FileLine } from './stream';
 
@@ -58,6 +59,7 @@ function sizeSlip(row: JudgedRow, plan: Plan, names: NameFacts): Finding | null 
     const value = row.values[field];
     if (!column || value === undefined) continue;
     for (const factor of SIZE_FACTORS) {
+      if (!couldFit({ ...row.values, [field]: value * factor }, row, plan)) continue;
       const typed = (value / column.scale) * factor;
       const line = scaled(row.line, column, typed, plan);
       if (hasNoFewer(judgeLine(line, plan, names))) continue;
@@ -65,6 +67,19 @@ function sizeSlip(row: JudgedRow, plan: Plan, names: NameFacts): Finding | null 
     }
   }
   return null;
+}
+
+const ROUGHLY = 0.1; // of the area: what fits the whole row fits this
+
+/** A quick look at the area or the mass, since a row is judged a hundred times as slowly. */
+function couldFit(values: Values, { shape }: JudgedRow, plan: Plan): boolean {
+  if (shape === null) return false;
+  const dimensions = dimensionsOf(shape, values, plan.mapping);
+  if (dimensionFaults(dimensions).length > 0) return false;
+  const { area = Number.NaN, mass = Number.NaN } = values;
+  const computed = sectionProperties(dimensions).area;
+  const isNear = (given: number) => Number.isNaN(given) || Math.abs(given / computed - 1) < ROUGHLY;
+  return isNear(area) || isNear(mass / plan.mapping.density);
 }
 
 /** Sound but for notes: then the change explains the row. */
@@ -116,6 +131,8 @@ function sizeSwap(row: JudgedRow, plan: Plan, names: NameFacts): Finding | null 
   for (const pair of SIZE_PAIRS) {
     const [one, other] = pair.map((field) => columnOf(plan, field));
     if (!one || !other || row.values[pair[0]] === undefined || row.values[pair[1]] === undefined) continue;
+    const exchanged = { ...row.values, [pair[0]]: row.values[pair[1]], [pair[1]]: row.values[pair[0]] };
+    if (!couldFit(exchanged, row, plan)) continue;
     const { number, cells } = row.line;
     const swapped = cells.map((cell, at) =>
       at === one.index ? (cells[other.index] ?? '') : at === other.index ? (cells[one.index] ?? '') : cell,

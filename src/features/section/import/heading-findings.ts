@@ -61,6 +61,10 @@ function unusedFindings(heading: string, column: number, plan: Plan, mapping: Ma
     const message = `"${heading}" stands twice. The second column is left out; look whether it is the right one.`;
     return [findingOf({ ...base, rule: 25, severity: 'warning', cause: 'column_repeated', message })];
   }
+  if (mapping.axes !== null && mapped.byAxes?.[mapping.axes] === null) {
+    const message = `"${heading}" means nothing by the convention that was chosen. Look whether the file follows another.`;
+    return [findingOf({ ...base, rule: 25, severity: 'warning', cause: 'axis_letter', message })];
+  }
   const message = `"${heading}" is no property of a section here. The column is left out.`;
   return [findingOf({ ...base, rule: 25, severity: 'note', cause: 'column_unknown', message })];
 }

@@ -156,10 +156,36 @@ export function recognise(head: Uint8Array, file: RecognisedFile): Recognition {
   if (lines.length === 0 && unfinished)
     return tooWide(head, encoding, delimiter) ?? { ok: false, refusal: unfinished };
   const at = headingAt(lines, isNamed);
-  const heading = lines[at];
-  const unfit = unfitness(heading);
-  if (!heading || unfit) return unfit ?? refused('empty', 'The file has no headings.');
+  const unfit = unfitness(lines[at]);
+  if (unfit) return unfit;
+  const known = file.encoding ?? (read.kind === 'known' ? read.encoding : null);
+  const bom = read.kind === 'known' && read.bom;
+  return recogniseTable({ head, lines, at, unfinished, encoding: known, choices, delimiter, bom });
+}
 
+type Head = {
+  head: Uint8Array;
+  lines: readonly FileLine[];
+  /** Index of the headings among them. */
+  at: number;
+  unfinished: Refusal | null;
+  encoding: Encoding | null;
+  choices: readonly Encoding[];
+  delimiter: Delimiter;
+  bom: boolean;
+};
+
+function recogniseTable({
+  head,
+  lines,
+  at,
+  unfinished,
+  encoding,
+  choices,
+  delimiter,
+  bom,
+}: Head): Recognition {
+  const heading = lines[at] ?? { number: 1, cells: [] };
   const units = isUnitLine(lines[at + 1]?.cells ?? []) ? (lines[at + 1] ?? null) : null;
   const columns = readColumns(heading.cells, units?.cells ?? null);
   const rows = lines
@@ -174,7 +200,7 @@ export function recognise(head: Uint8Array, file: RecognisedFile): Recognition {
   const marks = decimalMarkOf(cells);
   const mapping: Mapping = {
     version: 1,
-    encoding: file.encoding ?? (read.kind === 'known' ? read.encoding : null),
+    encoding,
     delimiter,
     decimalMark: marks.mark,
     axes: null,
@@ -197,7 +223,7 @@ export function recognise(head: Uint8Array, file: RecognisedFile): Recognition {
     columns: columns.map((column) => toRecognised(column, rows, columns)),
     questions: questionsOf(mapping, { head, choices, marks, rows }),
     language: languageOf(columns),
-    bom: read.kind === 'known' && read.bom,
+    bom,
     thousandsMarks: thousandsMarksOf(cells, marks.mark),
     preview: rows.slice(0, PREVIEW_ROWS).map(({ cells: row }) => row.map(cellText)),
   };

@@ -9,7 +9,7 @@ import type { FileLine } from './stream';
 
 /** Rows of which as many are explained by trying; trying costs as much as hundreds of sound rows. */
 const BLOCK = 1000;
-const EXPLAINED_IN_BLOCK = 60;
+const EXPLAINED_IN_BLOCK = 30;
 
 const isWorthTrying = (findings: readonly Finding[]) =>
   findings.some(isError) || findings.filter(({ severity }) => severity !== 'note').length > 1;

@@ -1,7 +1,7 @@
 import { type FormEvent, useState } from 'react';
 import { Button } from '@/components/ui/Button';
-import { mayAccept } from '@/features/section/import';
 import type { Finding } from '@/features/section/import/contract';
+import { mayAccept } from '@/features/section/import/report';
 import type { Accept, Fixes, ImportView } from './imports';
 
 export interface Deeds {

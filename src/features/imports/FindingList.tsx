@@ -1,8 +1,8 @@
 import { useState } from 'react';
 import { Button } from '@/components/ui/Button';
 import { useKeys } from '@/components/ui/use-keys';
-import { mayAccept } from '@/features/section/import';
 import type { Finding, FindingGroup } from '@/features/section/import/contract';
+import { mayAccept } from '@/features/section/import/report';
 import { FileScale } from './FileScale';
 import { type Deeds, FindingItem, OneField } from './FindingItem';
 import type { ImportView } from './imports';

@@ -1,7 +1,7 @@
 import { useState } from 'react';
 import { ZoneHeading } from '@/components/ui/ZoneHeading';
-import { answer, openQuestions } from '@/features/section/import';
 import type { Answer } from '@/features/section/import/contract';
+import { answer, openQuestions } from '@/features/section/import/mapping';
 import { AboutForm, type Draft } from './AboutForm';
 import { ColumnTable } from './ColumnTable';
 import { FindingZone } from './FindingZone';

@@ -9,7 +9,7 @@ const isBlank = (cells: readonly string[]) => {
   return true;
 };
 
-export const FALLBACK_ENCODING: Encoding = 'utf-8';
+const FALLBACK_ENCODING: Encoding = 'utf-8';
 
 /** The lines under the headings that are not blank, of a file given in pieces; the headings as they stand. */
 export class BodyReader {

@@ -28,10 +28,10 @@ export type DecimalMark = '.' | ',';
 export type Axes = NonNullable<SectionTableMeta['axes']>;
 export type HeadingLanguage = 'en' | 'de' | 'fr' | 'it' | 'es' | 'nl' | 'sv';
 
-export type SizeName = 'h' | 'b' | 'tw' | 'tf' | 'r' | 't';
+type SizeName = 'h' | 'b' | 'tw' | 'tf' | 'r' | 't';
 /** What a column of numbers holds; `dClear` is the clear depth of the web between the root radii. */
 export type NumberField = SizeName | TabulatedName | 'dClear';
-export type TextField = 'designation' | 'shape' | 'computed';
+type TextField = 'designation' | 'shape' | 'computed';
 export type Field = NumberField | TextField;
 
 export type MappedColumn = {

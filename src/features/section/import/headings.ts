@@ -25,7 +25,6 @@ export const FIELD_QUANTITY: Readonly<Record<NumberField, DimensionName>> = {
   j: 'second_moment',
   iw: 'warping',
 };
-export const NUMBER_FIELDS = Object.keys(FIELD_QUANTITY) as NumberField[];
 export const isNumberField = (field: Field | null): field is NumberField =>
   field !== null && Object.hasOwn(FIELD_QUANTITY, field);
 
@@ -86,7 +85,7 @@ export function readUnitText(text: string): { unit: string | null; factor: numbe
 }
 
 /** "I_w (10³ cm⁶)" into name, unit and multiplier. A unit also stands after a blank or a low line: "A cm2", "A_cm2". */
-export function readHeading(heading: string): Heading {
+function readHeading(heading: string): Heading {
   const text = withPowers(heading);
   const bracketed = /^(.*?)\s*[([]\s*([^)\]]*)[)\]]\s*$/.exec(text);
   if (bracketed) return { name: bracketed[1] ?? '', ...readUnitText(bracketed[2] ?? '') };

@@ -2,7 +2,7 @@ import type { FileIdentity, Finding } from './contract';
 import { findingOf } from './finding';
 
 /** Rows that the file adds to, changes in and takes from the edition before. */
-export type Changes = { changed: number; removed: number; of: number };
+type Changes = { changed: number; removed: number; of: number };
 
 const MANY = 0.05;
 

@@ -1,7 +1,7 @@
 export { applyFix } from './fix';
-export { type Changes, identityFindings } from './identity';
+export { identityFindings } from './identity';
 export { answer, openQuestions, remember } from './mapping';
-export { readSectionTable, type SectionTableReading } from './read';
+export { readSectionTable } from './read';
 export { recognise } from './recognise';
 export { addFindings, emptyReport, mayAccept, openCount, reportOf } from './report';
 export { RowCheck } from './row-check';

@@ -18,7 +18,7 @@ import { type UnitSlip, unitSlip } from './slips';
 
 const TABULATED_NAMES = Object.keys(TABULATED) as TabulatedName[];
 
-export function tabulatedOf({ values }: Pick<RowRead, 'values'>): Tabulated {
+function tabulatedOf({ values }: Pick<RowRead, 'values'>): Tabulated {
   const tabulated: { [Name in TabulatedName]?: number } = {};
   for (const name of TABULATED_NAMES) {
     const value = values[name];
@@ -65,7 +65,7 @@ export const withUnit = (value: number, column: NumberColumn): string =>
   `${inColumn(value, column)} ${column.factor === 1 ? '' : `× ${column.factor} `}${unitText(column.unit)}`.trim();
 
 /** As it would be typed into a cell of the column: the file's decimal mark, no thousands. */
-export const asCell = (value: number, column: NumberColumn, plan: Plan): string =>
+const asCell = (value: number, column: NumberColumn, plan: Plan): string =>
   String(Number((value / column.scale).toPrecision(4))).replace('.', plan.mark);
 
 /** What the properties of a row say against its dimensions and each other. */

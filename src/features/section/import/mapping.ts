@@ -1,4 +1,3 @@
-import { unitText } from '@/engine/quantity';
 import { unitScale } from './cells';
 import type { Answer, Axes, Field, MappedColumn, Mapping, Question } from './contract';
 import { FIELD_QUANTITY, isNumberField, readUnitText, settle } from './headings';
@@ -135,14 +134,3 @@ export function remember(remembered: Mapping, recognised: Mapping): Mapping | nu
     unitLine: recognised.unitLine,
   };
 }
-
-/** "I_w (10³ cm⁶)" for words about a column; its heading as it stands. */
-export const shownUnit = (column: Pick<MappedColumn, 'unit' | 'factor'>): string => {
-  const power = Math.round(Math.log10(column.factor));
-  const unit = unitText(column.unit ?? '');
-  if (power === 0) return unit;
-  const raised = String(power).replaceAll(/[-\d]/g, (digit) =>
-    digit === '-' ? '⁻' : ('⁰¹²³⁴⁵⁶⁷⁸⁹'[Number(digit)] ?? ''),
-  );
-  return `10${raised} ${unit}`;
-};

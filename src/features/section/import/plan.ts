@@ -38,7 +38,7 @@ export type Plan = {
 export type Corrections = Pick<FileFacts, 'corrections' | 'swaps' | 'assumed'>;
 /** What is wrong with whole columns, and what they are read by all the same. */
 export type ColumnFindings = Pick<FileFacts, 'findings'> & Corrections;
-export const NO_CORRECTIONS: Corrections = { corrections: [], swaps: [], assumed: {} };
+const NO_CORRECTIONS: Corrections = { corrections: [], swaps: [], assumed: {} };
 
 function numberColumn(
   column: MappedColumn,

@@ -7,7 +7,7 @@ import { RowCheck } from './row-check';
 import { Survey } from './survey';
 
 /** `rows` are those without an error. `faults` of a table that is read are warnings and notes. */
-export type SectionTableReading = { ok: boolean; rows: SectionRow[]; faults: Finding[] };
+type SectionTableReading = { ok: boolean; rows: SectionRow[]; faults: Finding[] };
 
 const failed = (faults: Finding[]): SectionTableReading => ({ ok: false, rows: [], faults });
 const unreadable = ({ message }: Refusal) =>

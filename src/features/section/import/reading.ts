@@ -61,7 +61,7 @@ export const isRolled = (shape: SectionShape | null): boolean =>
   shape === 'i' || shape === 'channel' || shape === 'tapered_i' || shape === 'tapered_channel';
 
 /** A finding of one cell. */
-export function cellFinding(
+function cellFinding(
   { line, printed, column, read }: Place,
   fault: {
     rule: RuleNumber;

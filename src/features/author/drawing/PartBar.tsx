@@ -34,43 +34,45 @@ const SUPPORT_WORDS: Readonly<Record<SupportChoice, string>> = {
 
 /** The chosen part: how it holds, where it stands, and taking it away. */
 export function PartBar({ editor, sketch, part, onRemove }: PartBarProps) {
-  const { document, readOnly } = editor;
-  const { pointer, kind, name } = part;
-  const why = whyKept(document, pointer);
-  const settles = textAt(document, `${pointer}/rise`) !== '';
+  const { pointer, name } = part;
   return (
-    <fieldset
+    <section
       className="flex flex-wrap items-end gap-x-14 gap-y-8 border-t border-rule pt-8"
-      disabled={readOnly}
+      aria-label="Chosen part"
     >
-      <legend className="sr-only">Chosen part</legend>
       <p className="w-full font-semibold" aria-live="polite">
         {name}
       </p>
-      {kind === 'support' && <KindField editor={editor} pointer={pointer} />}
-      {KEYS.filter((key) => kind !== 'dimension' && valueAt(document, `${pointer}/${key}`) !== undefined).map(
-        (key) => (
-          <PlaceField key={key} editor={editor} sketch={sketch} pointer={pointer} of={key} />
-        ),
-      )}
-      {kind === 'support' && (
-        <Button
-          size="small"
-          aria-pressed={settles}
-          onClick={() => editor.edit(...settlementEdits(document, pointer))}
-        >
-          {settles ? 'Let it not settle' : 'Let it settle'}
-        </Button>
-      )}
+      {!editor.readOnly && <Changes editor={editor} sketch={sketch} part={part} onRemove={onRemove} />}
       <Button size="small" onClick={() => showInForm(pointer)}>
         Show in the form
       </Button>
-      {kind !== 'dimension' && (
-        <Button size="small" keyName={why === undefined ? 'Del' : undefined} reason={why} onClick={onRemove}>
-          Remove
+    </section>
+  );
+}
+
+/** A dimension is changed by its length, which has a field of its own. */
+function Changes({ editor, sketch, part, onRemove }: PartBarProps) {
+  const { document } = editor;
+  const { pointer, kind } = part;
+  if (kind === 'dimension') return null;
+  const why = whyKept(document, pointer);
+  const settles = textAt(document, `${pointer}/rise`) !== '';
+  return (
+    <>
+      {kind === 'support' && <KindField editor={editor} pointer={pointer} />}
+      {KEYS.filter((key) => valueAt(document, `${pointer}/${key}`) !== undefined).map((key) => (
+        <PlaceField key={key} editor={editor} sketch={sketch} pointer={pointer} of={key} />
+      ))}
+      {kind === 'support' && (
+        <Button size="small" onClick={() => editor.edit(...settlementEdits(document, pointer))}>
+          {settles ? 'Let it not settle' : 'Let it settle'}
         </Button>
       )}
-    </fieldset>
+      <Button size="small" keyName={why === undefined ? 'Del' : undefined} reason={why} onClick={onRemove}>
+        Remove
+      </Button>
+    </>
   );
 }
 
@@ -95,7 +97,6 @@ function KindField({ editor, pointer }: FieldProps) {
     <div className="w-180">
       <ChoiceField
         label="Kind"
-        data-part-first
         choices={SUPPORT_CHOICES.map((value) => ({ value, label: SUPPORT_WORDS[value] }))}
         value={choiceOf(valueAt(document, pointer))}
         onChange={({ target }) => {
@@ -127,7 +128,6 @@ function PlaceField({
     <div className="w-180">
       <ChoiceField
         label={KEY_WORDS[of]}
-        data-part-first
         choices={texts.map((value) => ({ value, label: value }))}
         value={written}
         onChange={({ target }) => {

@@ -12,7 +12,7 @@ import { changing } from './releases';
 import type { Sketch } from './sketch';
 
 export const AT_A_PLACE = ['pin', 'roller', 'fixed', 'guided', 'spring', 'hinge', 'point', 'couple'] as const;
-export const OVER_A_LENGTH = ['uniform', 'triangle', 'curvature', 'segment'] as const;
+const OVER_A_LENGTH = ['uniform', 'triangle', 'curvature', 'segment'] as const;
 export type PlaceTool = (typeof AT_A_PLACE)[number];
 export type LengthTool = (typeof OVER_A_LENGTH)[number];
 
@@ -63,15 +63,6 @@ export function placed(steps: DraftSteps, target: Target): { readonly text: stri
   return { text, x: bay.from.x + offset };
 }
 
-const HOLDS: Readonly<Record<SupportKind | 'spring', SupportKind>> = {
-  pin: 'pin',
-  roller: 'roller',
-  fixed: 'fixed',
-  guided: 'guided',
-  free: 'free',
-  spring: 'free',
-};
-
 const isSupport = (tool: PlaceTool): tool is Extract<PlaceTool, SupportKind | 'spring'> =>
   tool === 'spring' || SUPPORT_KINDS.some((kind) => kind === tool);
 
@@ -107,7 +98,10 @@ function addSupport(
   // Supports that only stand under a condition are counted in the document, not on the beam.
   const isPlain = supports.length === count;
   const there = isPlain ? supports.findIndex(({ at }) => Math.abs(at - x) < 1e-9 * length) : -1;
-  const support = { kind: HOLDS[tool], ...(tool === 'spring' && { kv: parameter(steps, 'k', SPRING) }) };
+  const support = {
+    kind: tool === 'spring' ? 'free' : tool,
+    ...(tool === 'spring' && { kv: parameter(steps, 'k', SPRING) }),
+  };
   if (tool === 'spring') affectAll(steps);
   if (there >= 0) {
     const at = `/beam/supports/${there}`;

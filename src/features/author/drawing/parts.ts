@@ -1,11 +1,5 @@
 /** The parts of a drawn draft: where each stands on the beam, and where in the document. */
-import {
-  type Load,
-  type SegmentDocument,
-  type SupportDocument,
-  type SupportKind,
-  supportLetter,
-} from '@/engine/model';
+import { type Load, type SegmentDocument, type SupportDocument, supportLetter } from '@/engine/model';
 import { formatQuantity } from '@/engine/quantity';
 import { type Dimensioned, evaluateNumber, evaluateTruth, type Template } from '@/engine/template';
 import { drawnName } from '@/features/template/names';
@@ -25,7 +19,7 @@ export interface Part {
 }
 
 /** A support as it is drawn: springs beside its kind. */
-export interface DrawnSupport extends SupportDocument {
+interface DrawnSupport extends SupportDocument {
   readonly letter: string;
 }
 
@@ -48,14 +42,6 @@ export interface Drawn {
 
 type Beam = Template['beam'];
 type Conditional = { when?: Beam['length'] | undefined };
-
-export const SUPPORT_NAMES: Readonly<Record<SupportKind, string>> = {
-  fixed: 'fixed',
-  pin: 'pin',
-  roller: 'roller',
-  guided: 'guided',
-  free: 'free',
-};
 
 const metres = (si: number): string => formatQuantity(si, 'm');
 
@@ -173,7 +159,7 @@ const shown = <T extends Conditional>(list: readonly T[], isOn: (one: T) => bool
 
 function supportName({ kind, kv, kr, rise }: Beam['supports'][number]): string {
   const springs = [...(kv ? ['vertical spring'] : []), ...(kr ? ['rotational spring'] : [])];
-  const held = kind === 'free' && springs.length > 0 ? springs : [SUPPORT_NAMES[kind], ...springs];
+  const held = kind === 'free' && springs.length > 0 ? springs : [kind, ...springs];
   return [...held, ...(rise ? ['which moves'] : [])].join(', ');
 }
 

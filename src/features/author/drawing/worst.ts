@@ -10,7 +10,7 @@ const DRAWN = 80;
 const MOST_CORNERS = 16;
 const SEED = 1;
 
-export interface Found {
+interface Found {
   readonly values: StatedValues;
   /** Of what two methods, or a closed form, may differ by; Infinity where there is no result. */
   readonly share: number;

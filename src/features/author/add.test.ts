@@ -97,6 +97,17 @@ describe('one press', () => {
     expect(faultsOf(document)).toEqual([]);
   });
 
+  test('adds the first span of a draft that began empty, with all that a beam must have', () => {
+    const document = added(
+      { name: 'Empty' },
+      addSpan,
+      (before) => addOverhang(before, 'left'),
+      (before) => addLine(before, 'uniform', null),
+    );
+    expect(texts(document, '/beam/supports', 'at')).toEqual(['a', 'a + L']);
+    expect(faultsOf(document)).toEqual([]);
+  });
+
   test('adds a span before an overhang, which stays at the end', () => {
     const document = added(startDocument('One', 'overhang'), addSpan);
     expect(textAt(document, '/beam/length')).toBe('L + L2 + a');

@@ -3,7 +3,7 @@ import type { Written } from '@/features/review/draft';
 import { type Bay, baysOf, holdingSupports, lengthOf, tipOf } from './bays';
 import { isWholeLength, redescribe } from './describe';
 import { DraftSteps, plus, sameText } from './draft-steps';
-import { type Edit, listAt, type Pointer, textAt } from './edit';
+import { type Edit, listAt, type Pointer, textAt, valueAt } from './edit';
 import {
   COUPLE,
   CURVATURE,
@@ -15,6 +15,7 @@ import {
   quantity,
   SETTLEMENT,
   SPAN,
+  STIFFNESS,
   TRIANGULAR,
   UNIFORM,
 } from './entries';
@@ -31,9 +32,18 @@ export interface Added {
 export function adding(before: Written, add: (steps: DraftSteps) => Pointer): Added {
   const steps = new DraftSteps(before);
   const select = add(steps);
+  completeLists(steps);
   rechoose(steps, before);
   redescribe(steps, before);
   return { edits: steps.edits, select };
+}
+
+const LISTS = ['/tags', '/derived', '/rules', '/results', '/beam/loads', '/beam/redundants'];
+
+/** What a document may have nothing of must still be there: a draft that began empty has none of it. */
+function completeLists(steps: DraftSteps): void {
+  for (const list of LISTS) if (valueAt(steps.document, list) === undefined) steps.set(list, []);
+  if (valueAt(steps.document, '/stiffness') === undefined) steps.set('/stiffness', STIFFNESS);
 }
 
 /** Another beam has other redundants: its usual ones, unless those that are written will do. */

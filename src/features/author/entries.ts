@@ -111,6 +111,9 @@ export const CURVATURE: NewParameter = {
   group: 'T',
 };
 
+/** Of a beam whose results do not follow from its stiffness, but its shape does. */
+export const STIFFNESS = { default_ei: '20000 kNm2', affects: ['slope', 'deflection'] };
+
 /** Of each dimension a parameter as it begins. */
 const BEGINNINGS: Partial<Record<DimensionName, NewParameter>> = {
   length: SPAN,

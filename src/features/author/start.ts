@@ -3,7 +3,7 @@ import type { Written } from '@/features/review/draft';
 import { type Added, addLine, addOverhang, addSpan } from './add';
 import { redescribe } from './describe';
 import { DraftSteps } from './draft-steps';
-import { FREE_LENGTH, quantity, SPAN } from './entries';
+import { FREE_LENGTH, quantity, SPAN, STIFFNESS } from './entries';
 import { renameEdits } from './rename';
 
 export const STARTS = {
@@ -75,7 +75,7 @@ function blank(title: string, start: Start): Written {
       redundants: [],
       dimensions: [{ from: '0', to: 'L', symbol: 'L' }],
     },
-    stiffness: { default_ei: '20000 kNm2', affects: ['slope', 'deflection'] },
+    stiffness: STIFFNESS,
     rules: [],
     results: [],
     sources: [],

@@ -65,6 +65,18 @@ describe('the elevation strip of a propped cantilever', () => {
     ).toBe(true);
   });
 
+  test('says what an envelope comes to where one is drawn, and from what', () => {
+    const { moment } = solved(PROPPED).solution.diagrams;
+    const peaks = [
+      { x: 5, value: 60_000, of: '1.2 D + 1.6 L' },
+      { x: 0, value: -112_000, of: '1.4 D' },
+    ];
+    const enveloped = draw(PROPPED, { envelopes: { moment: { upper: moment, lower: moment, peaks } } });
+    expect(
+      has(enveloped, 'largest shear 50.0 kN at A, largest moment of the envelope −112.0 kNm at A, from 1.4 D,'),
+    ).toBe(true);
+  });
+
   test('has a plumb line that is a slider with a spoken station', () => {
     expect(has(drawn, 'role="slider"')).toBe(true);
     expect(has(drawn, 'aria-valuetext="3.200 m from A"')).toBe(true);

@@ -256,7 +256,6 @@ function RedundantZone({ evaluation: { beam, total }, mayEdit, onChoose }: Redun
         <legend className="sr-only">Redundant to release</legend>
         <RedundantChoice
           beam={beam}
-          solution={total}
           chosen={releaseKey(chosen)}
           onChoose={(releases) => onChoose(releases.map((one) => toRedundant(beam, one)))}
         />

@@ -1,6 +1,7 @@
 import { memo, useMemo, useRef } from 'react';
 import { forceMethodPictures } from '@/components/drawing/force-method-pictures';
 import { PictureEquation } from '@/components/drawing/PictureEquation';
+import { DRAWING_FORMATS } from '@/components/drawing/quantity-format';
 import { ZoneHeading } from '@/components/ui/ZoneHeading';
 import { forceMethod, type Solution } from '@/engine/beam';
 import { type Beam, checkRedundants, type Redundant } from '@/engine/model';
@@ -79,12 +80,12 @@ export const ForceMethod = memo(function ForceMethod({
       >
         Redundant
       </ZoneHeading>
-      <Choice beam={pictured.beam} solution={pictured.solution} chosen={chosen} onChoose={onChoose} />
+      <Choice beam={pictured.beam} chosen={chosen} onChoose={onChoose} />
       <div className="mt-20">
         <ZoneHeading letter={letters[1]} note={note}>
           {beam.degree > 0 ? 'Compatibility, worked' : 'Worked'}
         </ZoneHeading>
-        {beam.degree > 0 && <Equation {...pictured} />}
+        {beam.degree > 0 && <Equation {...pictured} system={system} />}
         <Derivation steps={shown.steps} formulaOf={shown.formulaOf} />
       </div>
     </div>
@@ -95,12 +96,13 @@ const Choice = memo(RedundantChoice);
 
 interface EquationProps extends Pick<SolvedCase, 'beam' | 'solution'> {
   readonly redundants: readonly Redundant[];
+  readonly system: UnitSystemName;
 }
 
-const Equation = memo(function Equation({ beam, solution, redundants }: EquationProps) {
+const Equation = memo(function Equation({ beam, solution, redundants, system }: EquationProps) {
   const pictures = useMemo(
-    () => forceMethodPictures(beam, forceMethod(beam, redundants), solution),
-    [beam, solution, redundants],
+    () => forceMethodPictures(beam, forceMethod(beam, redundants), solution, DRAWING_FORMATS[system]),
+    [beam, solution, redundants, system],
   );
   return (
     <PictureEquation

@@ -1,22 +1,21 @@
 import { useMemo } from 'react';
-import { forceMethodPictures, redundantName } from '@/components/drawing/force-method-pictures';
+import { redundantName, releasedPicture } from '@/components/drawing/force-method-pictures';
 import { MechanismSketch } from '@/components/drawing/MechanismSketch';
 import { RichHtml } from '@/components/drawing/marks/RichHtml';
 import { Schematic } from '@/components/drawing/Schematic';
-import { forceMethod, type Solution } from '@/engine/beam';
+import { forceMethod } from '@/engine/beam';
 import type { Beam, Redundant } from '@/engine/model';
 import { type BarredChoice, type Release, type ReleaseChoice, releaseChoices } from './release';
 
 interface RedundantChoiceProps {
   readonly beam: Beam;
-  readonly solution: Pick<Solution, 'diagrams'>;
   /** The key of the set in use. */
   readonly chosen: string;
   readonly onChoose: (releases: readonly Release[]) => void;
 }
 
 /** Every set of redundants as a card: what is taken away, and how the beam that is left sags. */
-export function RedundantChoice({ beam, solution, chosen, onChoose }: RedundantChoiceProps) {
+export function RedundantChoice({ beam, chosen, onChoose }: RedundantChoiceProps) {
   const { open, barred } = useMemo(() => releaseChoices(beam, chosen), [beam, chosen]);
   if (open.length === 0)
     return (
@@ -33,7 +32,6 @@ export function RedundantChoice({ beam, solution, chosen, onChoose }: RedundantC
           <OpenCard
             key={choice.key}
             beam={beam}
-            solution={solution}
             choice={choice}
             width={width}
             isChosen={choice.key === chosen}
@@ -73,12 +71,9 @@ interface OpenProps extends Omit<RedundantChoiceProps, 'chosen' | 'onChoose'> {
   readonly onChoose: () => void;
 }
 
-function OpenCard({ beam, solution, choice, width, isChosen, onChoose }: OpenProps) {
+function OpenCard({ beam, choice, width, isChosen, onChoose }: OpenProps) {
   const { redundants } = choice;
-  const picture = useMemo(
-    () => forceMethodPictures(beam, forceMethod(beam, redundants), solution).released,
-    [beam, redundants, solution],
-  );
+  const picture = useMemo(() => releasedPicture(beam, forceMethod(beam, redundants)), [beam, redundants]);
   const { caption: _, ...drawing } = picture;
   return (
     <label className={`cursor-pointer hover:bg-paper-2 ${CARD} ${isChosen ? 'bg-paper-2' : ''}`}>

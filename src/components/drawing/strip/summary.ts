@@ -1,7 +1,7 @@
 import type { Beam } from '@/engine/model/index';
 import { type DrawingFormat, figure } from '../format';
 import { letterAt, namedSupports } from '../names';
-import { toScreen } from '../signs';
+import { type Quantity, toScreen } from '../signs';
 import { PURPOSE, TITLE } from './diagram-layout';
 import type { StripInput } from './strip-layout';
 
@@ -29,12 +29,25 @@ export function summaryOf(input: StripInput, format: DrawingFormat): string {
   const start = `Beam ${length} long, ${supportWords(beam, format)}; ${loads === 1 ? 'one load' : `${loads} loads`}`;
   if (!solution) return `${start}; no result.`;
   const parts = input.quantities.map((quantity) => {
-    const { max, min } = solution.extremes[quantity];
-    const governing = Math.abs(min.value) > Math.abs(max.value) ? min : max;
-    const at = governing.at[0] ?? 0;
-    const place = letterAt(namedSupports(beam), at, beam.length) ?? figure(format, 'length', at);
-    const value = figure(format, PURPOSE[quantity], toScreen(quantity, governing.value));
-    return `largest ${TITLE[quantity].toLowerCase()} ${value} at ${place}`;
+    const { value, x, of } = governingOf(input, solution, quantity);
+    const place = letterAt(namedSupports(beam), x, beam.length) ?? figure(format, 'length', x);
+    const size = figure(format, PURPOSE[quantity], toScreen(quantity, value));
+    const name = `${TITLE[quantity].toLowerCase()}${of === undefined ? '' : ' of the envelope'}`;
+    return `largest ${name} ${size} at ${place}${of === undefined ? '' : `, from ${of}`}`;
   });
   return `${start}; ${parts.join(', ')}.`;
+}
+
+/** The largest value in magnitude of what is drawn: of an envelope with the loads that it comes `of`. */
+function governingOf(
+  { envelopes }: StripInput,
+  { extremes }: NonNullable<StripInput['solution']>,
+  quantity: Quantity,
+): { value: number; x: number; of?: string } {
+  const [first, ...others] = envelopes?.[quantity]?.peaks ?? [];
+  if (first)
+    return others.reduce((most, one) => (Math.abs(one.value) > Math.abs(most.value) ? one : most), first);
+  const { max, min } = extremes[quantity];
+  const { value, at } = Math.abs(min.value) > Math.abs(max.value) ? min : max;
+  return { value, x: at[0] ?? 0 };
 }

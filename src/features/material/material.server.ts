@@ -1,12 +1,13 @@
 import { and, eq } from 'drizzle-orm';
 import type { Tx } from '@/db/client';
 import { document } from '@/db/schema/library';
-import { type Material, materialFor, materialIn, materialsOf } from '@/engine/section';
+import { MATERIALS, type Material, materialFor, materialIn, materialsOf } from '@/engine/section';
 import { currentRevisions, type LibraryRevision, revisionsById } from '@/features/review/library.server';
 import { holdForUse } from '@/features/review/pin.server';
 import { type Fault, invalid } from '@/lib/app-error';
 import { contentHash } from '@/lib/fingerprint';
-import { materialKey, materialSetDocument, readMaterialKey } from './material';
+import { type MaterialChoice, materialKey, readMaterialKey } from './choice';
+import { materialSetDocument } from './material';
 
 /** A material and the revision of the set that it is read from; null for one that is as Putlog ships it. */
 export interface PlacedMaterial {
@@ -142,3 +143,24 @@ const finite = (material: Material) =>
   material.kind === 'steel'
     ? { ...material, strength: material.strength.map((band) => ({ ...band, upTo: String(band.upTo) })) }
     : material;
+
+/** What a section may be made of: the pinned revision of its set, and the issued one of every other. */
+export async function materialChoices(
+  tx: Tx,
+  practiceId: string,
+  pinned: PlacedMaterial | null,
+): Promise<MaterialChoice[]> {
+  const issued = await issuedMaterials(tx, practiceId);
+  const held = pinned?.set ? [readMaterials(pinned.set)] : [];
+  const others = issued.filter(({ set }) => set.slug !== pinned?.set?.slug);
+  const choices = [...held, ...others].flatMap(({ set, materials }) =>
+    materials.map((material) => ({
+      key: materialKey(material.id, set.slug),
+      material,
+      set: { slug: set.slug, name: set.name, revision: set.number },
+    })),
+  );
+  const own = pinned && !pinned.set ? [pinned.material] : [];
+  const shipped = (await keepsSets(tx, practiceId)) ? own : MATERIALS;
+  return [...shipped.map((material) => ({ key: material.id, material, set: null })), ...choices];
+}

@@ -1,17 +1,11 @@
 import { Checkbox } from '@/components/ui/Choice';
 import { ChoiceField, Field } from '@/components/ui/Field';
-import { choiceOf } from '@/features/material/material';
+import { choiceOf, namedChoices } from '@/features/material/choice';
 import type { FieldFaults } from '@/features/template/faults';
 import { isMadeOf } from '@/features/template/section-pick';
 import { CombinationFields } from './CombinationFields';
 import type { MemberInputs } from './evaluate';
-import {
-  type CriteriaChoice,
-  type Draft,
-  type DraftSection,
-  judgedBy,
-  type WorkspaceData,
-} from './workspace';
+import { type CriteriaChoice, type Draft, judgedBy, type WorkspaceData } from './workspace';
 
 interface BasisFieldsProps {
   readonly draft: Draft;
@@ -31,7 +25,7 @@ export function BasisFields({ draft, data, faults, onChange }: BasisFieldsProps)
           <ChoiceField
             label="Material"
             value={choiceOf(materials, section.material)?.key ?? ''}
-            choices={materialChoices(section, materials)}
+            choices={namedChoices(materials.filter(({ material }) => isMadeOf(section.values, material)))}
             help={setOf(choiceOf(materials, section.material))}
             error={faults.get('section/material') ?? faults.get('section')}
             onChange={(event) => onChange({ section: { ...section, material: event.target.value } })}
@@ -66,18 +60,6 @@ function chosenCriteria(
   const document = criteria.find(({ slug }) => slug === chosen)?.document;
   const combinations = document?.schema_version === 2 ? document.combinations.set : '';
   return { criteria: chosen, combinations, categories: {} };
-}
-
-/** Those of the section's kind; by their sets where two have a name in common. */
-function materialChoices(
-  { values }: DraftSection,
-  materials: WorkspaceData['materials'],
-): { value: string; label: string }[] {
-  const usable = materials.filter(({ material }) => isMadeOf(values, material));
-  return usable.map(({ key, material, set }) => {
-    const isAlone = usable.filter((other) => other.material.name === material.name).length === 1;
-    return { value: key, label: isAlone ? material.name : `${material.name}, ${set?.name ?? 'as shipped'}` };
-  });
 }
 
 /** Where its values stand. */

@@ -3,7 +3,7 @@ import { Field } from '@/components/ui/Field';
 import { UtilisationTick } from '@/components/ui/UtilisationTick';
 import { ZoneHeading } from '@/components/ui/ZoneHeading';
 import { formatFor, readQuantity, type UnitSystemName } from '@/engine/quantity';
-import type { MaterialChoice } from '@/features/material/material';
+import type { MaterialChoice } from '@/features/material/choice';
 import type { SectionItem } from '@/features/section/section';
 import { draftSection, type Utilisation } from './candidates';
 import type { MemberInputs } from './evaluate';

@@ -1,5 +1,5 @@
 import type { CheckKind } from '@/engine/check';
-import { choiceOf, type MaterialChoice } from '@/features/material/material';
+import { choiceOf, type MaterialChoice } from '@/features/material/choice';
 import { type SectionItem, toRowOrigin, toSectionValues } from '@/features/section/section';
 import { usualMaterial } from '@/features/template/section-pick';
 import { evaluateMember, type MemberInputs } from './evaluate';

@@ -4,7 +4,7 @@ import { withPractice } from '@/db/tenancy';
 import type { Template } from '@/engine/template';
 import { recordAudit } from '@/features/audit/audit.server';
 import { type Actor, type Found, type JobRow, openJob, type Page, touchJob } from '@/features/job/job.server';
-import { materialKey } from '@/features/material/material';
+import { materialKey } from '@/features/material/choice';
 import { decideByUpgrade } from '@/features/review/recall.server';
 import { AppError, invalid, stale } from '@/lib/app-error';
 import { type Assessment, assessMember } from './assess.server';

@@ -1,5 +1,5 @@
 import { useEffect, useState } from 'react';
-import type { MaterialChoice } from '@/features/material/material';
+import type { MaterialChoice } from '@/features/material/choice';
 import type { SectionItem } from '@/features/section/section';
 import { fetchSections } from '@/features/section/section.api';
 import { useRestedValue } from '@/features/template/use-live';

@@ -3,15 +3,13 @@ import type { Tx } from '@/db/client';
 import { person } from '@/db/schema/account';
 import { auditEvent } from '@/db/schema/audit';
 import { withPractice } from '@/db/tenancy';
-import { MATERIALS } from '@/engine/section';
 import { may } from '@/features/account/permission';
 import { issuedSets, type ReadSet } from '@/features/combination/combination.server';
 import { listCriteria } from '@/features/criteria/criteria.server';
 import { type Actor, openJob } from '@/features/job/job.server';
-import { type MaterialChoice, materialKey } from '@/features/material/material';
-import { issuedMaterials, readMaterials } from '@/features/material/material.server';
+import { materialChoices } from '@/features/material/material.server';
 import { toRowOrigin } from '@/features/section/section';
-import { loadPins, type Pins } from './pins.server';
+import { loadPins } from './pins.server';
 import { requireMember, toMemberView } from './row.server';
 import { type CombinationChoice, changesOf, type HistoryLine, type WorkspaceData } from './workspace';
 
@@ -57,26 +55,6 @@ const toChoice = ({ slug, reference, name, number, document }: ReadSet): Combina
   revision: number,
   document,
 });
-
-/** What sections may be made of: the pinned revision of its set, and the issued one of every other. */
-async function materialChoices(
-  tx: Tx,
-  practiceId: string,
-  pinned: Pins['section'],
-): Promise<MaterialChoice[]> {
-  const issued = await issuedMaterials(tx, practiceId);
-  const held = pinned?.set ? [readMaterials(pinned.set)] : [];
-  const others = issued.filter(({ set }) => set.slug !== pinned?.set?.slug);
-  const choices = [...held, ...others].flatMap(({ set, materials }) =>
-    materials.map((material) => ({
-      key: materialKey(material.id, set.slug),
-      material,
-      set: { slug: set.slug, name: set.name, revision: set.number },
-    })),
-  );
-  const shipped = issued.length === 0 ? MATERIALS : pinned && !pinned.set ? [pinned.material] : [];
-  return [...shipped.map((material) => ({ key: material.id, material, set: null })), ...choices];
-}
 
 const MOST_EVENTS = 50;
 

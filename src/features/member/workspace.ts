@@ -4,7 +4,7 @@ import type { CombinationSet } from '@/engine/combination';
 import type { Redundant } from '@/engine/model';
 import type { UnitSystemName } from '@/engine/quantity';
 import type { Template } from '@/engine/template';
-import { choiceOf, type MaterialChoice, materialKey, readMaterialKey } from '@/features/material/material';
+import { choiceOf, type MaterialChoice, materialKey, readMaterialKey } from '@/features/material/choice';
 import type { SectionValues } from '@/features/section/resolve';
 import type { RowOrigin } from '@/features/section/section';
 import { type Raw, toParameters, toRaw } from '@/features/template/raw';

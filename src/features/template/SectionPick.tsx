@@ -1,11 +1,14 @@
 import { useEffect, useId, useRef, useState } from 'react';
 import { FieldNote } from '@/components/ui/Field';
 import { formatFor, type UnitSystemName } from '@/engine/quantity';
+import { choiceOf, type MaterialChoice, namedChoices } from '@/features/material/choice';
 import type { PickedSection } from './page';
 import type { FoundSection } from './section-kit';
+import { isMadeOf } from './section-pick';
 
 interface SectionPickProps {
   readonly section: PickedSection | null;
+  readonly materials: readonly MaterialChoice[];
   readonly system: UnitSystemName;
   /** Why a section of the address could not be taken. */
   readonly fault: string | null;
@@ -18,7 +21,7 @@ type Kit = Awaited<ReturnType<typeof loadKit>>;
 const PAUSE_MS = 120; // between the last letter and the search
 
 /** A section by its designation, however typed, and what it is made of. */
-export function SectionPick({ section, system, fault, onPick }: SectionPickProps) {
+export function SectionPick({ section, materials, system, fault, onPick }: SectionPickProps) {
   const id = useId();
   const [text, setText] = useState('');
   const [message, setMessage] = useState<string | null>(fault);
@@ -28,9 +31,8 @@ export function SectionPick({ section, system, fault, onPick }: SectionPickProps
   const goTo = (part: 'select' | 'input') =>
     requestAnimationFrame(() => host.current?.querySelector<HTMLElement>(part)?.focus());
   const take = (part: Kit, { table, values, origin }: FoundSection, material?: string) => {
-    const materials = part.materialsFor(values);
-    const wanted = material ?? part.usualMaterial(values, table);
-    const made = materials.find(({ id }) => id === wanted) ?? materials[0];
+    const offered = materials.filter((one) => isMadeOf(values, one.material));
+    const made = choiceOf(offered, material ?? part.usualMaterial(values, table)) ?? offered[0];
     if (!made) return;
     const pick = part.pickSection(table, values, made, origin);
     setMessage(pick.ok ? null : pick.message);
@@ -47,6 +49,7 @@ export function SectionPick({ section, system, fault, onPick }: SectionPickProps
       {section ? (
         <Picked
           section={section}
+          materials={materials}
           onMaterial={(material) => loadKit().then((part) => take(part, section, material))}
           onClear={() => {
             onPick(null);
@@ -107,15 +110,14 @@ function FoundList({ found, system, onTake }: FoundListProps) {
 
 interface PickedProps {
   readonly section: PickedSection;
+  readonly materials: readonly MaterialChoice[];
   readonly onMaterial: (id: string) => void;
   readonly onClear: () => void;
 }
 
-function Picked({ section, onMaterial, onClear }: PickedProps) {
-  const [materials, setMaterials] = useState<readonly { id: string; name: string }[]>([]);
-  const { values, material, materialName } = section;
-  const offer = () => loadKit().then((kit) => setMaterials(kit.materialsFor(values)));
-  const offered = materials.length > 0 ? materials : [{ id: material, name: materialName }];
+function Picked({ section, materials, onMaterial, onClear }: PickedProps) {
+  const { values, material } = section;
+  const offered = namedChoices(materials.filter((one) => isMadeOf(values, one.material)));
   return (
     <div className="mt-2">
       <div className="flex items-baseline gap-8 border-b-[1.5px] border-ink bg-field px-6">
@@ -133,14 +135,12 @@ function Picked({ section, onMaterial, onClear }: PickedProps) {
       <select
         aria-label="Material"
         value={material}
-        onFocus={offer}
-        onPointerDown={offer}
         onChange={(event) => onMaterial(event.target.value)}
         className="mt-4 min-h-26 w-full text-schedule text-ink-2 underline decoration-ochre decoration-dotted underline-offset-3 pointer-coarse:min-h-44"
       >
-        {offered.map(({ id, name }) => (
-          <option key={id} value={id}>
-            {name}
+        {offered.map(({ value, label }) => (
+          <option key={value} value={value}>
+            {label}
           </option>
         ))}
       </select>

@@ -2,6 +2,7 @@ import { memo } from 'react';
 import { QuantityField } from '@/components/ui/QuantityField';
 import { formatNumber, toUnit, UNIT_SYSTEMS, type UnitSystemName } from '@/engine/quantity';
 import type { Template } from '@/engine/template';
+import type { MaterialChoice } from '@/features/material/choice';
 import type { PageValues, PickedSection } from './page';
 import { SectionPick } from './SectionPick';
 import { unitsOffered } from './units';
@@ -11,14 +12,15 @@ interface StiffnessFieldsProps extends Pick<PageValues, 'ei' | 'section'> {
   readonly system: UnitSystemName;
   readonly fault: string | undefined;
   readonly sectionFault: string | null;
+  readonly materials: readonly MaterialChoice[];
   readonly onChange: (change: Partial<PageValues>) => void;
 }
 
 /** EI as a number of its own, or from a section: one of the two. */
 export const StiffnessFields = memo(function StiffnessFields(props: StiffnessFieldsProps) {
-  const { template, ei, section, system, fault, sectionFault, onChange } = props;
+  const { template, ei, section, materials, system, fault, sectionFault, onChange } = props;
   const affects = template.stiffness.affects.join(', ');
-  const locked = section ? `from ${section.values.designation}, ${section.materialName}` : undefined;
+  const locked = section ? `from ${section.values.designation}, ${section.made.name}` : undefined;
   const shown = section ? { text: plainNumber(section, ei.unit), unit: ei.unit } : ei;
   return (
     <>
@@ -37,6 +39,7 @@ export const StiffnessFields = memo(function StiffnessFields(props: StiffnessFie
       </div>
       <SectionPick
         section={section}
+        materials={materials}
         system={system}
         fault={sectionFault}
         onPick={(picked: PickedSection | null) => onChange({ section: picked })}

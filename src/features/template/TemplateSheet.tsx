@@ -101,6 +101,7 @@ function ParametersZone({ data, page }: ZoneProps) {
           template={template}
           ei={values.ei}
           section={values.section}
+          materials={data.materials}
           system={system}
           fault={faults.get('ei')}
           sectionFault={data.sectionFault}

@@ -1,10 +1,11 @@
 import { type Tenant, withPractice } from '@/db/tenancy';
 import { checkRedundants } from '@/engine/model';
 import type { UnitSystemName } from '@/engine/quantity';
-import { materialFor } from '@/engine/section';
 import type { Template } from '@/engine/template';
 import { ENGINE_VERSION } from '@/engine/version';
 import { may, type Person } from '@/features/account/permission';
+import { choiceOf, type MaterialChoice } from '@/features/material/choice';
+import { materialChoices } from '@/features/material/material.server';
 import { chooseSection } from '@/features/section/choose.server';
 import { toRowOrigin } from '@/features/section/section';
 import { AppError } from '@/lib/app-error';
@@ -40,7 +41,8 @@ export async function readTemplatePage(
   const read = await readTemplate(viewer, key);
   const { template, row } = read;
   const stiffness = readStiffness(query);
-  const { section, fault } = await sectionOf(viewer, stiffness);
+  const materials = await withPractice(viewer, (tx) => materialChoices(tx, viewer.practiceId, null));
+  const { section, fault } = await sectionOf(viewer, stiffness, materials);
   const asked = readReleases(query.get('release') ?? '');
   const releases = asked.length > 0 ? asked : null;
   const system = viewer.unitSystem;
@@ -59,6 +61,7 @@ export async function readTemplatePage(
     parameters,
     ei: stiffness.ei,
     section,
+    materials,
     sectionFault: fault,
     releases,
     worked: workedAt(template, parameters, { ...stiffness, section }, releases, system),
@@ -77,14 +80,15 @@ const toHistoryLine = (line: TemplateRead['history'][number]): HistoryLine => ({
 
 async function sectionOf(
   viewer: Viewer,
-  { section: designation, table, material: id }: Stiffness,
+  { section: designation, table, material: key }: Stiffness,
+  materials: readonly MaterialChoice[],
 ): Promise<{ section: PickedSection | null; fault: string | null }> {
   if (designation === '') return { section: null, fault: null };
-  const material = materialFor(id);
-  if (!material) return { section: null, fault: `There is no material “${id}”. Choose the section again.` };
+  const material = choiceOf(materials, key);
+  if (!material) return { section: null, fault: `There is no material “${key}”. Choose the section again.` };
   try {
-    const key = { designation, table: table === '' ? undefined : table };
-    const found = await withPractice(viewer, (tx) => chooseSection(tx, viewer.practiceId, key));
+    const named = { designation, table: table === '' ? undefined : table };
+    const found = await withPractice(viewer, (tx) => chooseSection(tx, viewer.practiceId, named));
     const pick = pickSection(found.table, found.values, material, toRowOrigin(found));
     return pick.ok ? { section: pick.section, fault: null } : { section: null, fault: pick.message };
   } catch (error) {

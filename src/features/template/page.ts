@@ -1,6 +1,8 @@
 /** What a template's page is given by the server, and what it makes of it: pure, so that both sides say the same. */
 import type { UnitSystemName } from '@/engine/quantity';
+import type { Material } from '@/engine/section';
 import type { Template } from '@/engine/template';
+import type { MaterialChoice } from '@/features/material/choice';
 import type { SectionValues } from '@/features/section/resolve';
 import type { RowOrigin } from '@/features/section/section';
 import { evaluateTemplate, type SectionOfTemplate, type TemplateEvaluating } from './evaluate';
@@ -15,8 +17,9 @@ export interface PickedSection {
   readonly table: string;
   readonly origin?: RowOrigin | undefined;
   readonly values: SectionValues;
+  /** The key of what it is made of among the choices, and what that is. */
   readonly material: string;
-  readonly materialName: string;
+  readonly made: Material;
   readonly resolved: SectionOfTemplate;
 }
 
@@ -55,6 +58,8 @@ export interface TemplatePageData {
   readonly parameters: Readonly<Record<string, unknown>>;
   readonly ei: string;
   readonly section: PickedSection | null;
+  /** What a section may be made of. */
+  readonly materials: readonly MaterialChoice[];
   /** Why the address's section could not be taken. */
   readonly sectionFault: string | null;
   readonly releases: readonly Release[] | null;

@@ -4,7 +4,7 @@ import type { SectionValues } from '@/features/section/resolve';
 import { type RowOrigin, toRowOrigin, toSectionValues } from '@/features/section/section';
 import { fetchSections } from '@/features/section/section.api';
 
-export { materialsFor, pickSection, usualMaterial } from './section-pick';
+export { pickSection, usualMaterial } from './section-pick';
 
 export interface FoundSection {
   readonly table: string;

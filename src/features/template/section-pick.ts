@@ -1,11 +1,8 @@
-import { MATERIALS, type Material } from '@/engine/section';
+import type { Material } from '@/engine/section';
+import type { MaterialChoice } from '@/features/material/choice';
 import { resolveSection, type SectionValues } from '@/features/section/resolve';
 import type { RowOrigin } from '@/features/section/section';
 import type { PickedSection } from './page';
-
-/** What a section may be made of, the usual one first. */
-export const materialsFor = (values: Pick<SectionValues, 'dimensions'>): readonly Material[] =>
-  MATERIALS.filter((material) => isMadeOf(values, material));
 
 /** Whether such sections are made of such a material: rectangles of timber, all others of steel. */
 export const isMadeOf = (
@@ -35,7 +32,7 @@ export type PickOutcome =
 export function pickSection(
   table: string,
   values: SectionValues,
-  material: Material,
+  { key, material }: Pick<MaterialChoice, 'key' | 'material'>,
   origin?: RowOrigin | undefined,
 ): PickOutcome {
   const resolution = resolveSection(values, material);
@@ -44,6 +41,6 @@ export function pickSection(
   const resolved = { designation, ei, selfWeight, depth };
   return {
     ok: true,
-    section: { table, origin, values, material: material.id, materialName: material.name, resolved },
+    section: { table, origin, values, material: key, made: material, resolved },
   };
 }

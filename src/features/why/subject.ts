@@ -14,8 +14,9 @@ interface ChosenSection {
   readonly values: SectionValues;
   /** The slug of its table. */
   readonly table: string;
-  /** The material's id. */
+  /** The material's id or key, and the material itself where the page has it. */
   readonly material: string;
+  readonly made?: Material | undefined;
   readonly origin?: RowOrigin | undefined;
 }
 
@@ -66,7 +67,7 @@ function ofTemplate({
     typed: parameters,
     values: valuesOf(template, parameters),
     system,
-    section: section && sectionOf(section, materialFor(section.material)),
+    section: section && sectionOf(section, section.made ?? materialFor(section.material)),
     typedEi: ei,
     patterned: [],
     criteria: null,

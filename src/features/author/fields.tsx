@@ -123,13 +123,13 @@ export function LinesAt({ at, label, help, rows = 3 }: FieldAt & { readonly rows
 
 /** A list of words, with commas between. */
 export function WordsAt({ at, label, help }: FieldAt) {
-  const { value, onChange, fault } = useJoined(at, ',');
+  const { value, onChange, fault, isEmpty } = useJoined(at, ',');
   return (
     <Field
       data-at={at}
       label={label}
       help={help}
-      error={fault}
+      error={isEmpty ? undefined : fault}
       readOnly={useReadOnly()}
       autoComplete="off"
       spellCheck={false}

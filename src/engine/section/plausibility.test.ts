@@ -149,3 +149,75 @@ describe('tolerances', () => {
     expect(found(0.98).map(({ severity }) => severity)).toEqual(['warning']);
   });
 });
+
+describe('a tube to ASTM A500', () => {
+  // HSS6×4×1/4, AISC Manual: 15.62 lb/ft, t_des 0.233 in, A 4.30 in² (from memory)
+  const hss = tube(6 * 0.0254, 4 * 0.0254, 0.25 * 0.0254, 'ASTM A500');
+  const POUND_PER_FOOT = 1.488164; // kg/m, NIST SP 811
+  const printed = (pounds: number, squareInches: number) =>
+    plausibilityFindings(
+      hss,
+      { mass: pounds * POUND_PER_FOOT, area: squareInches * 0.0254 ** 2 },
+      { density: 7850, rootRadiusKnown: true, tubeStandard: 'ASTM A500' },
+    ).map(({ rule, severity, property }) => [rule, severity, property]);
+
+  test('as printed is silent: the mass is that of the nominal wall', () => {
+    expect(printed(15.62, 4.3)).toEqual([]);
+  });
+  test('weight over 3.403 A of 1.00 means that the weight is of the design wall', () => {
+    expect(printed(3.403 * 4.3, 4.3)).toEqual([['nominal_wall', 'warning', 'mass']]);
+  });
+  test('an area of the nominal wall', () => {
+    expect(printed(15.62, 15.62 / 3.403)).toEqual([['nominal_wall', 'warning', 'area']]);
+  });
+  test('a mass that is neither', () => {
+    expect(printed(13, 4.3)).toEqual([['mass', 'error', 'mass']]);
+  });
+});
+
+describe('shapes whose table breaks a usual bound', () => {
+  const rulesOf = (d: Parameters<typeof plausibilityFindings>[0], tabulated: Tabulated) =>
+    plausibilityFindings(d, tabulated, OPTIONS).map(({ rule }) => rule);
+
+  test('a minor shape factor outside 1.50 to 1.62', () => {
+    expect(findings({ wPlMinor: right('wElMinor') * 1.75 })).toMatchObject([
+      { rule: 'shape_factor_minor', severity: 'warning', property: 'wPlMinor' },
+    ]);
+  });
+  test('minor moduli exchanged', () => {
+    const exchanged = { wElMinor: right('wPlMinor'), wPlMinor: right('wElMinor') };
+    expect(findings(exchanged)).toMatchObject([{ rule: 'plastic_below_elastic', property: 'wPlMinor' }]);
+  });
+  test('a modulus in cubic inches is a slip, not an exchange', () => {
+    const found = findings({ wPlMajor: right('wPlMajor') / 2.54 ** 3 });
+    expect(found).toMatchObject([{ rule: 'plastic_modulus', severity: 'error' }]);
+    expect(found[0]?.cause).toMatch(/in³ under a heading of cm³/);
+  });
+  test('a web thicker than its flanges, and a depth of five widths', () => {
+    expect(rulesOf({ ...OV260, tw: 0.013 }, {})).toEqual(['proportions']);
+    expect(rulesOf({ ...OV260, b: 0.05 }, {})).toEqual(['proportions']);
+  });
+  test('a tube that warps', () => {
+    const d = tube(0.2, 0.1, 0.005, 'EN 10210');
+    expect(rulesOf(d, { iw: 1e-9 })).toEqual(['warping']);
+    expect(rulesOf(d, { iw: 0 })).toEqual([]);
+  });
+  test('a channel, a solid bar and an angle have their own torsion and warping', () => {
+    const channel = { shape: 'channel', h: 0.2, b: 0.075, tw: 0.006, tf: 0.0125, r: 0.012 } as const;
+    const { iw, j } = sectionProperties(channel);
+    expect(rulesOf(channel, { iw, j })).toEqual([]);
+    expect(rulesOf(channel, { iw: 1.3 * iw, j: 3 * j })).toEqual(['torsion', 'warping']);
+    // A square bar of side a: J = 0.1406 a⁴ (Roark's Formulas, 7th ed., Table 10.1)
+    const bar = { shape: 'rectangle', h: 0.05, b: 0.05 } as const;
+    expect(rulesOf(bar, { j: 0.1406 * 0.05 ** 4 })).toEqual([]);
+    expect(rulesOf(bar, { j: 0.16 * 0.05 ** 4 })).toEqual(['torsion']);
+    const angle = { shape: 'angle', h: 0.1, b: 0.1, t: 0.01, r: 0.012, toe: 0.006 } as const;
+    expect(rulesOf(angle, { iw: 1e-9 })).toEqual(['warping']);
+  });
+  test('tapered flanges may differ by twice as much', () => {
+    const found = (options: { taperedFlanges?: boolean }) =>
+      plausibilityFindings(OV260, row({ iMajor: right('iMajor') * 1.025 }), { ...OPTIONS, ...options });
+    expect(found({}).map(({ rule }) => rule)).toContain('second_moment');
+    expect(found({ taperedFlanges: true }).map(({ rule }) => rule)).not.toContain('second_moment');
+  });
+});

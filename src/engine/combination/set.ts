@@ -20,7 +20,7 @@ export type SetCombination = {
 };
 
 /** What a variable group may be: a row of the ψ table. */
-export type SetCategory = {
+type SetCategory = {
   id: string;
   name: string;
   psi0: number;
@@ -33,7 +33,7 @@ export type SetCategory = {
 };
 
 export const LIMIT_STATES = ['strength', 'allowable', 'equilibrium'] as const;
-export type LimitState = (typeof LIMIT_STATES)[number];
+type LimitState = (typeof LIMIT_STATES)[number];
 
 /** How a group's loads stand on the member: each span and overhang only where adverse, or on the whole length at once. */
 export type Pattern = {
@@ -103,7 +103,7 @@ type Given = { readonly group: LoadGroup; readonly factor: SetFactor; readonly v
  * A combination of a set with the numbers of the chosen categories, named in the letters of the set. It is two where
  * groups that are not combined with one another only accompany: the one without the one, and the one without the other.
  */
-export function combinationsIn(
+function combinationsIn(
   set: CombinationSet,
   { factors }: Pick<SetCombination, 'factors'>,
   chosen: Categories,

@@ -16,7 +16,7 @@ export interface PlacedMaterial {
 }
 
 /** A revision of a set with its materials. */
-export interface ReadMaterials {
+interface ReadMaterials {
   readonly set: LibraryRevision;
   readonly materials: readonly Material[];
 }
@@ -28,7 +28,7 @@ export const readMaterials = (set: LibraryRevision): ReadMaterials => ({
 });
 
 /** What sections may be made of: the issued revision of each set. */
-export async function issuedMaterials(tx: Tx, practiceId: string): Promise<ReadMaterials[]> {
+async function issuedMaterials(tx: Tx, practiceId: string): Promise<ReadMaterials[]> {
   const revisions = await currentRevisions(tx, practiceId, 'material-set');
   return revisions.filter(({ state }) => state === 'issued').map(readMaterials);
 }

@@ -146,7 +146,8 @@ function readDigits(digits: string, scale: number, mark: DecimalMark): number | 
 }
 
 function readFraction(text: string, column: CellColumn, scale: number): number | CellFault {
-  const reading = readQuantity(text, column.quantity, { unit: column.unit });
+  const inches = text.replace(/^(\d+)-(?=\d+\/\d+$)/, '$1 '); // in a table 1-1/2 is no foot
+  const reading = readQuantity(inches, column.quantity, { unit: column.unit });
   if (!reading.ok) return error(35, 'fraction', reading.message);
   const multiplier = scale / unitScale(column.unit, column.quantity);
   const value = reading.value * multiplier;

@@ -5,7 +5,7 @@ import { FieldNote } from '@/components/ui/Field';
 import { TitleBlock } from '@/components/ui/TitleBlock';
 import { TitleStrip } from '@/components/ui/TitleStrip';
 import { paths } from '@/paths';
-import { askProof, bundleAddress, layAside, submitDraft } from './author.api';
+import { type Answer, askProof, bundleAddress, layAside, submitDraft } from './author.api';
 import type { Autosave } from './autosave.api';
 import type { DraftPageData } from './page';
 import { useSnapshot, useTextAt } from './use-editor';
@@ -16,7 +16,11 @@ interface BlockProps {
 }
 
 /** What is said when something is not saved that must be. */
-const UNSAVED = 'Not saved yet. See above what keeps it.';
+const UNSAVED: Answer<never> = {
+  kind: 'refused',
+  message: 'Not saved yet. See above what keeps it.',
+  faults: [],
+};
 
 /** The steps of a draft, each taken of what is saved: a step saves first. */
 function useSteps({ data, autosave }: BlockProps) {
@@ -24,20 +28,15 @@ function useSteps({ data, autosave }: BlockProps) {
   const [isBusy, setBusy] = useState(false);
   const version = useSnapshot((snapshot) => snapshot.version);
   const { slug, revision } = data.draft;
-  const take = async (
-    act: () => Promise<
-      { kind: 'done' } | { kind: 'refused'; message: string; faults: readonly { message: string }[] }
-    >,
-    to: string,
-  ) => {
+  const take = async (act: () => Promise<Answer<unknown>>, to: string) => {
     if (isBusy) return;
     setBusy(true);
     setSaid(undefined);
     const isSaved = (await autosave()?.flush()) ?? false;
-    const outcome = isSaved ? await act() : ({ kind: 'refused', message: UNSAVED, faults: [] } as const);
+    const outcome = isSaved ? await act() : UNSAVED;
     setBusy(false);
     if (outcome.kind === 'done') location.assign(to);
-    else setSaid([outcome.message, ...outcome.faults.map(({ message }) => message)].join(' '));
+    else setSaid([...new Set([outcome.message, ...outcome.faults.map(({ message }) => message)])].join(' '));
   };
   const of = { slug, revision };
   const review = paths.review('template', slug, revision);

@@ -11,7 +11,7 @@ type DraftSaving =
   | { readonly kind: 'unreachable' }
   | Refusal;
 
-export interface Refusal {
+interface Refusal {
   readonly kind: 'refused';
   readonly message: string;
   readonly faults: readonly Fault[];
@@ -65,7 +65,7 @@ const refusal = (status: number, { detail, errors }: z.output<typeof problem>): 
     ? { kind: 'refused', message: SESSION_ENDED, faults: [] }
     : { kind: 'refused', message: detail, faults: errors };
 
-type Done<T> = { readonly kind: 'done'; readonly value: T } | Refusal;
+export type Answer<T> = { readonly kind: 'done'; readonly value: T } | Refusal;
 
 const LOST = 'The server does not answer. Try again in a moment.';
 
@@ -74,7 +74,7 @@ async function ask<T>(
   url: string,
   read: (json: unknown) => T,
   version?: number,
-): Promise<Done<T>> {
+): Promise<Answer<T>> {
   const headers = version === undefined ? {} : { 'If-Match': `"${version}"` };
   const response = await fetch(url, { method, headers }).catch(() => null);
   const json: unknown = await response?.json().catch(() => null);

@@ -34,7 +34,10 @@ export function PlacePicker(props: PlacingProps & { readonly onPlace: (target: T
   const places = useMemo(() => placesOf(sketch), [sketch]);
   const [target, setTarget] = useState<Target | null>(() => places.at(-1) ?? null);
   const perPx = layout.toMetres(1) - layout.toMetres(0);
-  const pick = (x: number): Target | null => snapped(places, x, REACH * perPx) ?? newPlaceAt(sketch, x, STEP);
+  const pick = (wanted: number): Target | null => {
+    const x = within(sketch, wanted);
+    return snapped(places, x, REACH * perPx) ?? newPlaceAt(sketch, x, STEP);
+  };
   const onKey = (event: KeyboardEvent): boolean => {
     const side = sideOf(event.key);
     if (side === null || !target) return false;

@@ -61,11 +61,12 @@ function toEntry(bell: Element, { title, detail, href, created_at, read_at }: No
 
 /** Whoever sees a page has seen what its notices tell. */
 async function markThisPage(): Promise<void> {
-  await fetch(paths.api.readNotices, {
+  const answer = await fetch(paths.api.readNotices, {
     method: 'POST',
     headers: { 'Content-Type': 'application/json' },
     body: JSON.stringify({ href: location.pathname + location.search }),
   });
+  await answer.text(); // one that nobody reads keeps one of the browser's few connections
 }
 
 function whenSeen(work: () => void): void {

@@ -121,7 +121,7 @@ function byConvention(name: string, plain: string, isLength: boolean) {
     name === 't' ? 'tw' : name === 'T' ? 'tf' : name === 'D' ? 'h' : name === 'H' ? 'iw' : null;
   const settled = (axes: Axes): Field | null => {
     if (axes === 'british' && british) return british;
-    const field = REGIONAL[axes][plain] ?? null;
+    const field = Object.hasOwn(REGIONAL[axes], plain) ? (REGIONAL[axes][plain] ?? null) : null;
     if (!isLength || !plain.startsWith('i')) return field;
     return field === 'iMajor' ? 'rMajor' : field === 'iMinor' ? 'rMinor' : null;
   };

@@ -130,6 +130,16 @@ const CASES: readonly [string, Uint8Array, RegExp, number][] = [
   ],
   ['UTF-16 without a mark', utf16(`${HEAD}\n${ROWS.join('\n')}\n`, false), /^encoding/, 0],
   [
+    'names that every object has',
+    file(
+      'name,constructor,h (mm),b (mm),shape',
+      'constructor 1,x,200,47,constructor',
+      '__proto__ 2,y,225,47,rectangle',
+    ),
+    /shape_unknown: "constructor" is no shape/,
+    1,
+  ],
+  [
     'decimal marks that may be either',
     file('name;h (mm);b (mm);shape', 'A 1;1,200;1,047;rectangle'),
     /^decimal_mark: .*1,200/,

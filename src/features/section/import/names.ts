@@ -216,7 +216,8 @@ function clearFinding(row: RowRead, plan: Plan): Finding | null {
 
 /** What a row's name says against its values, and its clear depth. */
 export function nameFindings(row: RowRead, plan: Plan, names: NameFacts): Finding[] {
-  const usual = names.depths[row.name.family];
+  const { family } = row.name;
+  const usual = Object.hasOwn(names.depths, family) ? names.depths[family] : undefined;
   return [
     names.mass ? massFinding(row, plan) : null,
     usual === undefined ? null : depthFinding(row, plan, usual),

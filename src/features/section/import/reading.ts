@@ -114,16 +114,18 @@ function readDesignation(line: FileLine, plan: Plan, findings: Finding[]): strin
 const SHAPES: ReadonlySet<string> = new Set(MEASURED_SHAPES);
 const isShape = (text: string): text is SectionShape => SHAPES.has(text);
 /** Families as suppliers name them. */
-const SHAPE_WORDS: Readonly<Record<string, SectionShape>> = {
-  h: 'i',
-  beam: 'i',
-  column: 'i',
-  u: 'channel',
-  c: 'channel',
-  solid: 'rectangle',
-  flat: 'rectangle',
-  bar: 'round',
-};
+const SHAPE_WORDS: ReadonlyMap<string, SectionShape> = new Map<string, SectionShape>(
+  Object.entries({
+    h: 'i',
+    beam: 'i',
+    column: 'i',
+    u: 'channel',
+    c: 'channel',
+    solid: 'rectangle',
+    flat: 'rectangle',
+    bar: 'round',
+  } as const),
+);
 
 /** A file of tapered flanges says so once, not in every row. */
 const TAPERED: Readonly<Partial<Record<SectionShape, SectionShape>>> = {
@@ -140,7 +142,7 @@ function shapeOf(line: FileLine, plan: Plan, printed: string, findings: Finding[
   if (plan.shape === null) return plan.mapping.shape;
   const read = cellText(line.cells[plan.shape] ?? '').toLowerCase();
   if (isShape(read)) return read;
-  const known = SHAPE_WORDS[read] ?? (read === '' ? plan.mapping.shape : null);
+  const known = SHAPE_WORDS.get(read) ?? (read === '' ? plan.mapping.shape : null);
   if (known !== null) return known;
   const column = { index: plan.shape, heading: plan.headings[plan.shape] ?? 'shape' };
   const message = `"${read.slice(0, 40)}" is no shape. Give one of ${MEASURED_SHAPES.join(', ')}.`;
@@ -148,8 +150,6 @@ function shapeOf(line: FileLine, plan: Plan, printed: string, findings: Finding[
   findings.push(cellFinding(place, { rule: 25, severity: 'error', cause: 'shape_unknown', message }));
   return null;
 }
-
-const UNIT_RULE: ReadonlySet<Cause> = new Set(['replacement_character']);
 
 function cellFixes(fault: CellFault, line: number, column: NumberColumn): Finding['fixes'] {
   if (fault.suggestion !== undefined) {
@@ -163,7 +163,7 @@ function cellFixes(fault: CellFault, line: number, column: NumberColumn): Findin
       },
     ];
   }
-  if (!UNIT_RULE.has(fault.cause)) return [dropRow(line)];
+  if (fault.cause !== 'replacement_character') return [dropRow(line)];
   return [
     {
       label: 'Read the file as Windows-1252',

@@ -135,3 +135,41 @@ test('going back to a former edition makes its rows the next one, which a second
     withPractice(writer, (tx) => storedRowsHash(tx, writer.practiceId, revisionId));
   expect((await rowsOf(first.revisionId)).count).toBe(rows.length);
 });
+
+test('a section that the next edition leaves out is hidden from new members and opens in the edition that had it', async () => {
+  const [writer, reviewer] = await foundPractice(['librarian'], ['checker']);
+  await issueSections({ author: writer, reviewer }, SLUG);
+  const cookie = await signInAs(writer.email, PASSWORD);
+  const gone = rows[0]?.designation ?? '';
+  const kept = rows[2]?.designation ?? '';
+  const found = async (designation: string) => {
+    const { json } = await ask('GET', `/api/v1/sections?table=${SLUG}&q=${encodeURIComponent(designation)}`, {
+      cookie,
+    });
+    return json.items.some((item: { designation: string }) => item.designation === designation);
+  };
+  expect([await found(gone), await found(kept)]).toEqual([true, true]);
+  const { revisionId } = await withPractice(writer, async (tx) => {
+    const key = await createDraft(tx, writer, {
+      kind: 'section-table',
+      slug: SLUG,
+      reference: meta.reference,
+      name: meta.name,
+      body: editionBody(meta, nextRows()),
+      schemaVersion: 1,
+      changeNote: 'Next catalogue.',
+      changeClass: 'improvement',
+      consequence: 'service',
+    });
+    const { practiceId } = writer;
+    await fillEdition(tx, { practiceId, revisionId: key.revisionId, table: SLUG }, nextRows());
+    return key;
+  });
+  await takeStep(writer, revisionId, { step: 'submit' });
+  await takeStep(reviewer, revisionId, { step: 'issue' });
+  expect([await found(gone), await found(kept)]).toEqual([false, true]);
+  const at = `/api/v1/sections/${SLUG}/${gone.replaceAll(' ', '')}`;
+  expect((await ask('GET', at, { cookie })).status).toBe(404);
+  const old = await ask('GET', `${at}?edition=1`, { cookie });
+  expect([old.status, old.json.source.status]).toEqual([200, 'superseded']);
+});

@@ -118,7 +118,10 @@ export async function countAgainst(
   revisionId: string,
   rows: readonly SectionRow[],
 ): Promise<{ matched: number; changed: number }> {
-  const given = rows.map((row) => ({ key: row.key, ...Object.fromEntries(COMPARED.map((name) => [name, row[name]])) }));
+  const given = rows.map((row) => ({
+    key: row.key,
+    ...Object.fromEntries(COMPARED.map((name) => [name, row[name]])),
+  }));
   const columns = sql.raw(COMPARED.map((name) => `${name} float8`).join(', '));
   const [found] = await tx.execute<{ matched: number; changed: number }>(sql`
     select count(*)::int as matched, count(*) filter (where ${sql.join(COMPARED.map(differs), sql` or `)})::int as changed

@@ -1,6 +1,7 @@
-import { solveBeam } from '@/engine/beam/index';
+import { type Solution, solveBeam, stationPositions } from '@/engine/beam/index';
+import { prepareFast } from '@/engine/continuous/index';
 import { influenceLine } from '@/engine/influence/index';
-import { readBeam } from '@/engine/model/index';
+import { type Beam, readBeam } from '@/engine/model/index';
 import { evaluate } from '@/engine/polynomial/index';
 import { proofLimit, proveSolution } from '@/engine/proof/index';
 import { runProofCases } from '@/engine/template/index';
@@ -27,6 +28,16 @@ const REASON = {
   two: 'the rounding of both methods, 32 digits inside',
 } as const;
 
+/** The rows of what doubles solve, beside those of 32 digits. */
+const inDoubles = (family: string): string => `${family}, in doubles`;
+
+/** The beam by the fast solver; null where it leaves it to 32 digits. */
+function solvedInDoubles(beam: Beam): Solution | null {
+  const { by, ...solution } = prepareFast(beam).solve();
+  // Of what is compared here it has all.
+  return by === 'doubles' ? (solution as Solution) : null;
+}
+
 function printedValues(): ErrorTable {
   const table = new ErrorTable('Printed values, in units of the last printed digit', REASON.digit);
   for (const { family, source, title, document, quantity, printed, units } of printedBeamValues()) {
@@ -43,6 +54,8 @@ function printedValues(): ErrorTable {
       table.add(kind, (Math.abs(got - want) / tolerance) * units, units * (1 + 1e-9), name);
     };
     add(family, quantityOf(quantity, beam, solveBeam(beam)));
+    const fast = solvedInDoubles(beam);
+    if (fast) add(inDoubles(family), quantityOf(quantity, beam, fast));
     const ordinate = family === 'influence ordinates' && ordinateLine(beam, quantity);
     if (ordinate) {
       const { line } = influenceLine(ordinate.unloaded, ordinate.quantity);
@@ -69,10 +82,15 @@ function exactValues(): ErrorTable {
       table.skip(name, 'the beam is refused');
       continue;
     }
-    const apart = differences(kindsOf(solveBeam(reading.value), positions), exact);
-    for (const kind of Object.keys(KINDS) as (keyof Kinds)[]) {
-      for (const error of apart[kind]) table.add(KINDS[kind], error, WITHIN, name);
-    }
+    const add = (solution: Solution, family: (kind: string) => string) => {
+      const apart = differences(kindsOf(solution, positions), exact);
+      for (const kind of Object.keys(KINDS) as (keyof Kinds)[]) {
+        for (const error of apart[kind]) table.add(family(KINDS[kind]), error, WITHIN, name);
+      }
+    };
+    add(solveBeam(reading.value), (kind) => kind);
+    const fast = solvedInDoubles(reading.value);
+    if (fast) add(fast, inDoubles);
   }
   return table;
 }
@@ -92,6 +110,18 @@ function templateProofs(): ErrorTable {
   return table;
 }
 
+/** Stations at which doubles are compared with 32 digits. */
+const STATIONS = 7;
+
+/** The largest difference of doubles from 32 digits, of any kind; null where they do not solve the beam. */
+function differenceOfDoubles(beam: Beam, wide: Solution): number | null {
+  const fast = solvedInDoubles(beam);
+  if (!fast) return null;
+  const positions = stationPositions(beam, STATIONS);
+  const apart = differences(kindsOf(fast, positions), kindsOf(wide, positions));
+  return Math.max(...Object.values(apart).flat());
+}
+
 function randomBeams(): ErrorTable {
   const table = new ErrorTable('Random beams, force method against stiffness, by feature', REASON.two);
   let found = 0;
@@ -105,10 +135,13 @@ function randomBeams(): ErrorTable {
     }
     found++;
     const beam = reading.value;
-    const { equilibrium, compatibility, agreement } = proveSolution(beam, solveBeam(beam));
+    const solution = solveBeam(beam);
+    const { equilibrium, compatibility, agreement } = proveSolution(beam, solution);
     const worst = Math.max(equilibrium, compatibility, agreement); // NaN if one of them is
     for (const feature of ['all', ...featuresOf(document)])
       table.add(feature, worst, proofLimit(beam), `seed ${seed}`);
+    const apart = differenceOfDoubles(beam, solution);
+    if (apart !== null) table.add('doubles beside 32 digits', apart, proofLimit(beam), `seed ${seed}`);
   }
   return table;
 }

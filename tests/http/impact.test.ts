@@ -265,9 +265,9 @@ describe('a worker that is killed', () => {
     const slug = 'fixed-ends-point';
     await job('I-5', [{ ...member('K0'), template: slug, parameters: { L: '6 m', a: '2 m', P: '20 kN' } }]);
     await owner.sql`insert into member (practice_id, id, job_id, mark, title, purpose, template_revision_id, section_id, material,
-        criteria_revision_id, parameters, settings, status, result, fingerprint, engine_version, evaluated_at, evaluated_by_id, created_by_id, changed_by_id)
+        criteria_revision_id, material_revision_id, combination_revision_id, parameters, settings, status, result, fingerprint, engine_version, evaluated_at, evaluated_by_id, created_by_id, changed_by_id)
       select practice_id, gen_random_uuid(), job_id, 'K' || n, title, purpose, template_revision_id, section_id, material,
-        criteria_revision_id, parameters, settings, status, result, fingerprint, engine_version, evaluated_at, evaluated_by_id, created_by_id, changed_by_id
+        criteria_revision_id, material_revision_id, combination_revision_id, parameters, settings, status, result, fingerprint, engine_version, evaluated_at, evaluated_by_id, created_by_id, changed_by_id
       from member, generate_series(1, 1999) n where mark = 'K0' and practice_id = ${people.engineer.practiceId}`;
     await draftTemplate(people.librarian, slug, heavier(slug));
     const url = at('template', slug, 2);

@@ -1,9 +1,8 @@
 import { useEffect, useRef, useState } from 'react';
 import { Field } from '@/components/ui/Field';
-import { isSymbol } from '@/engine/template/author';
 import type { Pointer } from './edit';
 import { useReadOnly } from './fields';
-import { renameEdits } from './rename';
+import { isOwnSymbol, renameEdits } from './rename';
 import { useDraft, useFaultAt, useTextAt } from './use-editor';
 
 /** The symbol of a parameter, column or derived value; left, it is renamed wherever it is spoken of. */
@@ -14,8 +13,8 @@ export function SymbolAt({ at }: { readonly at: Pointer }) {
   const good = useRef(symbol);
   useEffect(() => {
     setTyped(symbol);
-    if (isSymbol(symbol)) good.current = symbol;
-  }, [symbol]);
+    if (isOwnSymbol(store.document, symbol)) good.current = symbol;
+  }, [store, symbol]);
   const commit = () => {
     if (typed !== symbol) store.edit(...renameEdits(store.document, at, good.current, typed));
   };

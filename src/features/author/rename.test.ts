@@ -3,7 +3,7 @@ import type { Written } from '@/features/review/draft';
 import { readTemplate } from '@/features/review/read-template';
 import { writtenTemplates } from '../../../tests/support/templates';
 import { applyEdits, listAt, textAt } from './edit';
-import { declaredSymbols, renameEdits, replaced, texOf } from './rename';
+import { declaredSymbols, isOwnSymbol, renameEdits, replaced, texOf } from './rename';
 
 test.each([
   ['L*L1 + L', 'L', 'S', 'S*L1 + S'],
@@ -69,7 +69,7 @@ describe('a symbol that is renamed', () => {
   };
 
   test('to what is no symbol, or is another’s, stands in its field alone', () => {
-    for (const to of ['2L', 'a', 'sqrt', ''])
+    for (const to of ['2L', 'a', 'sqrt', 'EI', 'RA', ''])
       expect(renameEdits(document, '/parameters/0', 'L', to)).toEqual([
         { do: 'set', at: '/parameters/0/symbol', value: to },
       ]);
@@ -84,6 +84,16 @@ describe('a symbol that is renamed', () => {
         { symbol: 'a', tex: 'a' },
       ],
       beam: { length: 'L2 + a' },
+    });
+  });
+
+  test('after it stood as another’s leaves the other one alone', () => {
+    const twice = applyEdits(document, renameEdits(document, '/parameters/1', 'a', 'L')).document;
+    expect(isOwnSymbol(twice, 'L')).toBe(false);
+    const { document: after } = applyEdits(twice, renameEdits(twice, '/parameters/1', 'a', 'c'));
+    expect(after).toMatchObject({
+      parameters: [{ symbol: 'L' }, { symbol: 'c' }],
+      beam: { length: 'L + c' },
     });
   });
 });

@@ -1,7 +1,7 @@
 /** A symbol by another name, wherever the document speaks of it. */
-import { isSymbol } from '@/engine/template/author';
+import { isReserved, isSymbol } from '@/engine/template/author';
 import type { Written } from '@/features/review/draft';
-import { type Edit, listAt, type Pointer, textAt, valueAt } from './edit';
+import { applyEdit, type Edit, listAt, type Pointer, textAt, valueAt } from './edit';
 import { expressionPlaces, messagePlaces, namePlaces, statedPlaces } from './places';
 
 const WORD = /"[^"]*"|[A-Za-z][A-Za-z0-9_]*/g;
@@ -18,16 +18,23 @@ export function declaredSymbols(document: Written): string[] {
     .filter((one) => one !== '');
 }
 
+/** Whether a parameter, column or derived value may be called so. */
+const isGood = (symbol: string): boolean => isSymbol(symbol) && !isReserved(symbol);
+
+/** Whether this is the symbol of one part alone: what is spoken of by it can follow when it is changed. */
+export const isOwnSymbol = (document: Written, symbol: string): boolean =>
+  isGood(symbol) && declaredSymbols(document).filter((one) => one === symbol).length === 1;
+
 /**
  * Gives the parameter, column or derived value at `of` a symbol, and renames it wherever it is spoken of. `was` is its
- * last good symbol. A text that is no symbol, or another's, only stands in its field: nothing is mixed up.
+ * last good symbol. A text that is no symbol, is another's or has a meaning of its own only stands in its field: nothing
+ * is mixed up.
  */
 export function renameEdits(document: Written, of: Pointer, was: string, to: string): Edit[] {
   const own: Edit = { do: 'set', at: `${of}/symbol`, value: to };
-  const isTaken =
-    declaredSymbols(document).filter((one) => one === to).length >
-    (textAt(document, `${of}/symbol`) === to ? 1 : 0);
-  if (was === to || !isSymbol(was) || !isSymbol(to) || isTaken) return [own];
+  const others = declaredSymbols(applyEdit(document, { do: 'remove', at: `${of}/symbol` }).document);
+  const isMixed = others.includes(was) || others.includes(to);
+  if (was === to || !isGood(was) || !isGood(to) || isMixed) return [own];
   const tex = textAt(document, `${of}/tex`);
   return [
     own,

@@ -185,9 +185,14 @@ const KINDS: readonly Kind[] = [
           scaleCell(table, row, name, 10 ** (POWERS[name] ?? 1));
         return column(['mixed_units']);
       }),
-      rule(27, 'units in some cells', ({ table }) => {
+      rule(27, 'units in some cells', ({ table, format }) => {
         for (let row = 1; row < 4; row++) {
-          setCell(table, row, 'h', `${plainly(Number(cellAt(table, row, 'h')) / 10)} cm`);
+          setCell(
+            table,
+            row,
+            'h',
+            `${plainly(Number(cellAt(table, row, 'h')) / 10).replace('.', format.mark)} cm`,
+          );
         }
         return column(['cell_unit']);
       }),
@@ -249,7 +254,7 @@ const KINDS: readonly Kind[] = [
         setCell(file.table, file.row, 'h', `'${value}`);
         return at(file, ['hidden_apostrophe']);
       }),
-      rule(34, 'power of ten of a spreadsheet', typed(['I_major'], ['1.2E+03', '4E+05'], 'scientific')),
+      rule(34, 'power of ten of a spreadsheet', typed(['I_major'], ['12E+03', '4E+05'], 'scientific')),
       rule(35, 'fraction among millimetres', (file) => {
         const tenths = Math.round(Number(cellAt(file.table, file.row, 'h')) * 10);
         setCell(file.table, file.row, 'h', `${Math.floor(tenths / 10)} ${tenths % 10}/10`);

@@ -55,6 +55,8 @@ describe('a cell of millimetres', () => {
     expect(readCell('2O4', MM, '.')).toMatchObject({ value: expect.closeTo(0.204, 12), suggestion: '204' });
     expect(readCell('3-Apr', MM, '.')).toMatchObject({ value: null, suggestion: '3/4' });
     expect(readCell('32.3', MM, ',')).toMatchObject({ value: null, suggestion: '32,3' });
+    expect(readCell('10.1 cm', MM, ',')).toMatchObject({ suggestion: '10,1 cm' });
+    expect(readCell('1.2E+03', MM, ',')).toMatchObject({ cause: 'decimal_mark', suggestion: '1,2E+03' });
   });
 });
 

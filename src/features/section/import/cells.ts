@@ -182,6 +182,14 @@ function readOddNumber(raw: string, text: string, column: CellColumn, mark: Deci
     }
     return error(34, 'not_a_number', `"${text.slice(0, 40)}" is not a number. Correct it.`);
   }
+  const read = readPlain(raw, digits, scale, mark);
+  if (typeof read === 'number' || read.suggestion === undefined || unit === '') return read;
+  const suggestion = `${read.suggestion} ${unit}`;
+  return { ...read, suggestion, expected: suggestion };
+}
+
+/** The number part of a cell. */
+function readPlain(raw: string, digits: string, scale: number, mark: DecimalMark): number | CellFault {
   const repaired = digits.replaceAll(ZERO_LETTER, '0').replaceAll(ONE_LETTER, '1');
   if (repaired !== digits) {
     const read = readDigits(repaired, scale, mark);
@@ -190,8 +198,14 @@ function readOddNumber(raw: string, text: string, column: CellColumn, mark: Deci
     const base = { rule: 37, severity: 'warning', cause: 'letter_for_digit', message } as const;
     return { ...base, value: read, suggestion: repaired, expected: repaired };
   }
-  const power = /^([\d.,]+)[eE]([+-]?\d+)$/.exec(digits);
-  if (power) return readScientific(power[1] ?? '', Number(power[2]), scale, mark);
+  const power = /^([\d.,]+)([eE])([+-]?\d+)$/.exec(digits);
+  if (power) {
+    const [, mantissa = '', e, exponent] = power;
+    const read = readScientific(mantissa, Number(exponent), scale, mark);
+    if (typeof read === 'number' || read.suggestion === undefined) return read;
+    const suggestion = `${read.suggestion}${e}${exponent}`;
+    return { ...read, suggestion, expected: suggestion };
+  }
   const value = readDigits(digits, scale, mark);
   if (typeof value !== 'number' || !raw.trim().startsWith("'")) return value;
   const message = 'A hidden apostrophe makes this number a text. It is read as the number.';
@@ -200,14 +214,19 @@ function readOddNumber(raw: string, text: string, column: CellColumn, mark: Deci
 
 const CUT_FIGURES = 3; // "1.2E+03": what a narrow spreadsheet column leaves
 
-function readScientific(mantissa: string, exponent: number, scale: number, mark: DecimalMark) {
+function readScientific(
+  mantissa: string,
+  exponent: number,
+  scale: number,
+  mark: DecimalMark,
+): number | CellFault {
   const value = readDigits(mantissa, scale * 10 ** exponent, mark);
   if (typeof value === 'number' && value / scale > LARGEST) return readDigits(`${LARGEST}0`, scale, mark);
   if (typeof value !== 'number') return value;
   if (exponent < CUT_FIGURES || mantissa.replaceAll(/\D/g, '').length > CUT_FIGURES) return value;
   const message =
     'A spreadsheet has written this with a power of ten and may have cut its figures. Compare the source.';
-  return { rule: 34, severity: 'warning', cause: 'scientific', message, value } satisfies CellFault;
+  return { rule: 34, severity: 'warning', cause: 'scientific', message, value };
 }
 
 const PLAIN = { '.': /^\d{1,12}(?:\.\d{1,12})?$/, ',': /^\d{1,12}(?:,\d{1,12})?$/ } as const;

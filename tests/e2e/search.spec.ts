@@ -3,6 +3,7 @@ import { enter } from './support/person';
 import { expectSound, WIDTHS } from './support/screen';
 
 test.use({ bypassCSP: true });
+test.setTimeout(90_000);
 
 const field = (page: Page) => page.getByRole('combobox', { name: 'Search everything' });
 const chosen = (page: Page) => page.locator('[role="option"][aria-selected="true"]');
@@ -96,7 +97,6 @@ test('what cannot be answered says so and can be tried again', async ({ page, ba
 });
 
 test('the dialog and its page are sound at every width', async ({ page, baseURL }) => {
-  test.setTimeout(90_000);
   await enter(page, baseURL);
   for (const width of WIDTHS) {
     await page.setViewportSize({ width, height: 900 });

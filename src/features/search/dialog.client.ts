@@ -2,6 +2,7 @@
 
 import { fromHere } from '@/components/ui/from-here';
 import { goToZone } from '@/components/ui/zone';
+import { paths } from '@/paths';
 import {
   type Command,
   commandGroups,
@@ -166,8 +167,13 @@ class SearchDialog {
     this.#show([], false);
     this.#say(error.message);
     if (error.isSignedOut) {
-      const link = Object.assign(document.createElement('a'), { href: location.href, className: 'link' });
-      link.textContent = 'Sign in';
+      // In another tab: this one may hold what is not saved.
+      const link = Object.assign(document.createElement('a'), {
+        href: paths.signIn,
+        target: '_blank',
+        className: 'link',
+      });
+      link.textContent = 'Sign in, in another tab';
       this.#state.append(' ', link);
     }
   }
@@ -230,10 +236,13 @@ class SearchDialog {
       return;
     }
     keep(this.#q);
-    if (option.href.startsWith(ZONE)) {
-      this.#dialog.close();
-      goToZone(option.href.slice(ZONE.length));
-    } else if (isNewTab) window.open(option.href, '_blank', 'noopener');
+    if (isNewTab && !option.href.startsWith(ZONE)) {
+      window.open(option.href, '_blank', 'noopener');
+      return;
+    }
+    // Closed, for whoever comes back to this page as it was left.
+    this.#dialog.close();
+    if (option.href.startsWith(ZONE)) goToZone(option.href.slice(ZONE.length));
     else location.assign(option.href);
   }
 

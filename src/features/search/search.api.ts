@@ -20,11 +20,10 @@ export class SearchFailed extends Error {
 
 /** The best answers of every kind: GET /api/v1/search. */
 export async function fetchSearch(q: string, signal: AbortSignal): Promise<SearchView> {
-  const response = await fetch(`${paths.api.search}?${new URLSearchParams({ q })}`, { signal }).catch(
-    (cause: unknown) => {
-      throw signal.aborted ? cause : new SearchFailed(undefined, { cause });
-    },
-  );
+  const lost = (cause: unknown) => {
+    throw signal.aborted ? cause : new SearchFailed(undefined, { cause });
+  };
+  const response = await fetch(`${paths.api.search}?${new URLSearchParams({ q })}`, { signal }).catch(lost);
   if (!response.ok) throw new SearchFailed(response.status);
-  return response.json();
+  return response.json().catch(lost);
 }

@@ -40,6 +40,8 @@ class Saver {
   /** What the server has, of `version`; what the page sent last. */
   private base: Content;
   private sent: Content;
+  /** What was common to both when they parted; older than `base` while something is left to decide. */
+  private parted: Content;
   private timer: ReturnType<typeof setTimeout> | undefined;
   private waitingSince: number | null = null;
   private running: Promise<boolean> | null = null;
@@ -51,6 +53,7 @@ class Saver {
   ) {
     this.base = contentOf(draft);
     this.sent = this.base;
+    this.parted = this.base;
     this.key = `draft ${draft.slug} ${draft.revision}`;
   }
 
@@ -64,6 +67,7 @@ class Saver {
     const { base, mine } = reading.data;
     const { content, conflicts } = mergeContents(base, mine, theirs);
     if (sameContent(content, theirs) && conflicts.length === 0) return;
+    if (conflicts.length > 0) this.parted = base;
     this.store.takeIn(content, conflicts, null);
     this.noticed();
   }
@@ -119,6 +123,7 @@ class Saver {
     switch (outcome.kind) {
       case 'saved': {
         this.base = contentOf(outcome.draft);
+        this.parted = this.base;
         this.sent = content;
         sessionStorage.removeItem(this.key);
         const { version, faults } = outcome.draft;
@@ -145,6 +150,7 @@ class Saver {
   private takeIn(theirs: DraftView): void {
     const their = contentOf(theirs);
     const { content, conflicts } = mergeContents(this.base, this.store.content, their);
+    if (conflicts.length === 0) this.parted = their;
     this.base = their;
     this.sent = their;
     this.store.put({ version: theirs.version, saving: { kind: 'waiting' } });
@@ -152,8 +158,7 @@ class Saver {
   }
 
   private keep(): void {
-    const { base } = this;
-    sessionStorage.setItem(this.key, JSON.stringify({ base, mine: this.store.content }));
+    sessionStorage.setItem(this.key, JSON.stringify({ base: this.parted, mine: this.store.content }));
   }
 
   /** The page is left with something that is not saved: it is sent on its way, and kept in case that it does not arrive. */

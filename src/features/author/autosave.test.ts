@@ -162,6 +162,24 @@ describe('a draft that is written', () => {
     expect(server.stands.document).toMatchObject({ name: 'Theirs', summary: 'Kept' });
   });
 
+  test('asks again for a decision that the last visit left open', async () => {
+    server.save({ document: { ...draft.document, name: 'Theirs' } });
+    type('/name', 'Mine');
+    await rest();
+    expect(store.snapshot.conflicts).toHaveLength(1);
+    listeners.get('pagehide')?.();
+    autosave.stop();
+    open(server.stands);
+    expect(store.snapshot.conflicts).toEqual([{ at: '/document/name', mine: 'Mine', theirs: 'Theirs' }]);
+    await rest();
+    expect(server.stands.document['name']).toBe('Theirs');
+    // And once more, after a reload that came before any decision.
+    listeners.get('pagehide')?.();
+    autosave.stop();
+    open(server.stands);
+    expect(store.snapshot.conflicts).toHaveLength(1);
+  });
+
   test('is sent on its way when the page is left', async () => {
     type('/summary', 'Last words');
     listeners.get('pagehide')?.();

@@ -1,4 +1,7 @@
+import { eq } from 'drizzle-orm';
 import { afterAll, beforeAll, describe, expect, test } from 'vitest';
+import { person } from '@/db/schema/account';
+import { withPractice } from '@/db/tenancy';
 import { createApiToken } from '@/features/account/token.server';
 import { ask } from '../support/app';
 import { webConnection } from '../support/database';
@@ -269,6 +272,16 @@ describe('an entry follows what it is about', () => {
     await send(url, { body: 'The periwinkle term is missing.' }, 'checker');
     const [found] = await hits('periwinkle');
     expect(found).toMatchObject({ kind: 'note', href: `/library/template/${SPAN}/revisions/1` });
+  });
+
+  test('a person who takes another name, with the jobs begun under the old one', async () => {
+    await begin('Z-1', 'Kiln', {}, 'colleague');
+    await withPractice(ours.people.colleague, (tx) =>
+      tx.update(person).set({ name: 'Quentin Zephyr' }).where(eq(person.id, ours.people.colleague.personId)),
+    );
+    expect(await addresses('zephyr')).toEqual(
+      expect.arrayContaining(['/search?q=Quentin+Zephyr', '/jobs/Z-1']),
+    );
   });
 
   test('a person who is let go', async () => {

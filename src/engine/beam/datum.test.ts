@@ -1,7 +1,7 @@
 import { describe, expect, test } from 'vitest';
-import { type BeamDocument, readBeam } from '../model/index';
+import { type BeamDocument, readBeam, spansOf } from '../model/index';
 import { evaluate, extremes } from '../polynomial/index';
-import { type Datum, deflectionFrom, solveBeam, spansOf, zeroShear } from './index';
+import { type Datum, deflectionFrom, solveBeam, zeroShear } from './index';
 
 function solved(document: BeamDocument) {
   const reading = readBeam({ horizontal: 'ignore', ...document });

@@ -1,6 +1,5 @@
-import type { Beam } from '../model/index';
+import { type Beam, type Span, spansOf } from '../model/index';
 import { add, evaluate, type Piecewise, piecewise, scale } from '../polynomial/index';
-import { type Span, spansOf } from './spans';
 
 /**
  * What a deflection is measured from: where the beam was, the straight lines between its supports as they have moved,

@@ -3,7 +3,6 @@ export { type Datum, deflectionFrom, isOverhang } from './datum';
 export { type ForceMethodParts, forceMethod, releasedBeam } from './force-method';
 export { shearShare } from './shear-share';
 export { type PreparedBeam, prepareBeam, solveBeam } from './solve';
-export { spansOf } from './spans';
 export { stationPositions, stationsAt } from './stations';
 export { tipParts } from './tip';
 export type * from './types';

@@ -1,4 +1,4 @@
-import { type Beam, letteredSupports } from '../model/index';
+import { type Beam, letteredSupports, spansOf } from '../model/index';
 
 /** A stretch of the beam between two vertical supports, or beyond the last: lengths and positions in m. */
 export type Region = {
@@ -12,26 +12,19 @@ export type Region = {
 };
 
 /**
- * The spans between vertical supports and the overhangs beyond them, from the left. An overhang of no length is none.
- * They are the spans that loads are patterned by as well.
+ * The spans between vertical supports and the overhangs beyond them, from the left, by name: none where there is no such
+ * support. They are the spans that loads are patterned by as well.
  */
 export function regionsOf(beam: Pick<Beam, 'length' | 'supports'>): Region[] {
-  const held = letteredSupports(beam)
-    .filter(({ support }) => support.vertical.kind !== 'free')
-    .map(({ support: { at }, letter }) => ({ at, letter }));
-  const first = held[0];
-  const last = held.at(-1);
-  if (!first || !last) return [];
-  const overhangs = (from: number, to: number, held: 'left' | 'right', letter: string): Region[] =>
-    to > from ? [{ kind: 'overhang', from, to, held, name: `overhang beyond ${letter}` }] : [];
-  const spans = held.slice(1).map((right, index): Region => {
-    const left = held[index] ?? first;
-    const name = `span ${left.letter}–${right.letter}`;
-    return { kind: 'span', from: left.at, to: right.at, held: 'both', name };
+  const letters = new Map(letteredSupports(beam).map(({ index, letter }) => [index, letter]));
+  return spansOf(beam).flatMap(({ from, to, left, right }): Region[] => {
+    const [start, end] = [left, right].map((support) =>
+      support === null ? undefined : letters.get(support),
+    );
+    if (start && end) return [{ kind: 'span', from, to, held: 'both', name: `span ${start}–${end}` }];
+    const letter = start ?? end;
+    if (!letter) return [];
+    const held = start ? 'left' : 'right';
+    return [{ kind: 'overhang', from, to, held, name: `overhang beyond ${letter}` }];
   });
-  return [
-    ...overhangs(0, first.at, 'right', first.letter),
-    ...spans,
-    ...overhangs(last.at, beam.length, 'left', last.letter),
-  ];
 }

@@ -1,5 +1,4 @@
-import { spansOf } from '../beam/index';
-import type { Beam, Redundant } from '../model/index';
+import { type Beam, type Redundant, spansOf } from '../model/index';
 import {
   add,
   evaluate,

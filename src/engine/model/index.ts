@@ -9,6 +9,7 @@ export {
   eligibleRedundants,
   placeRedundant,
 } from './redundants';
+export { type Span, spansOf } from './spans';
 export { findMotion, frameOf, type MovingPart, riseOf } from './stability';
 export * from './types';
 export { metres, nameRedundant, nameSupport } from './words';

@@ -1,6 +1,6 @@
 /** The axial force that a person states beside the beam, and whether the beam is still in scope with it. */
-import { AXIAL_LIMIT, axialScope, isOverhang, spansOf } from '@/engine/beam';
-import type { Beam } from '@/engine/model';
+import { AXIAL_LIMIT, axialScope, isOverhang } from '@/engine/beam';
+import { type Beam, spansOf } from '@/engine/model';
 import { formatNumber } from '@/engine/quantity';
 
 /** The longest span, or twice the longest overhang: a free end bends in half a wave of twice its length. */

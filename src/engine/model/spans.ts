@@ -1,4 +1,4 @@
-import type { Beam } from '../model/index';
+import type { Beam } from './types';
 
 /** A stretch between neighbouring vertical supports, rigid or sprung, or an overhang, which has one of them only. */
 export type Span = {

@@ -28,7 +28,7 @@ export interface ObjectStore {
 const PART = 5 * 1024 * 1024;
 const AT_ONCE = 2;
 
-export function openStore(bucket: string, config: S3ClientConfig): ObjectStore {
+function openStore(bucket: string, config: S3ClientConfig): ObjectStore {
   const client = new S3Client(config);
   return {
     put: async (key, content, type) => {
@@ -61,7 +61,7 @@ export function openStore(bucket: string, config: S3ClientConfig): ObjectStore {
 }
 
 /** What the environment says of the store: PUTLOG_S3_BUCKET and how to reach it; null where it names none. */
-export function readStoreSettings(env: NodeJS.ProcessEnv): { bucket: string; config: S3ClientConfig } | null {
+function readSettings(env: NodeJS.ProcessEnv): { bucket: string; config: S3ClientConfig } | null {
   const bucket = env['PUTLOG_S3_BUCKET'];
   if (!bucket) return null;
   const endpoint = env['PUTLOG_S3_ENDPOINT'];
@@ -90,7 +90,7 @@ let shared: ObjectStore | null | undefined;
 /** The process's own store; null where none is set. */
 export function store(): ObjectStore | null {
   if (shared === undefined) {
-    const settings = readStoreSettings(process.env);
+    const settings = readSettings(process.env);
     shared = settings && openStore(settings.bucket, settings.config);
   }
   return shared;

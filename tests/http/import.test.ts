@@ -263,6 +263,12 @@ describe('an import', () => {
     const typed = (await desk.fix(id, { cells: [{ line: 2, column: 8, value: '1208' }], leave_out: [7] }))
       .json;
     expect([typed.open, typed.rows]).toEqual([0, 5]);
+    // What was put right stays in the report as it was found.
+    const { json } = await desk.act('GET', id, '/report', undefined);
+    expect(json.fixes[0]).toMatchObject({
+      label: 'Line 2, “Iy cm4”: 1208',
+      findings: [{ line: 2, read: '12,08' }],
+    });
   });
 
   test('is cancelled at any time before it is an edition, and never after', async () => {

@@ -95,12 +95,20 @@ describe('a query that forgets its WHERE', () => {
     expect(JSON.stringify(own)).not.toContain(theirs.engineer.personId);
   });
 
-  test.each([...TENANT_TABLES, 'session', 'api_token', 'credential', 'section', 'job_person', 'audit_check'])(
-    'of %s sees nothing before a practice is set',
-    async (table) => {
-      expect(await as(null, `select * from ${table}`)).toHaveLength(0);
-    },
-  );
+  test.each([
+    ...TENANT_TABLES,
+    'session',
+    'api_token',
+    'credential',
+    'section',
+    'job_person',
+    'audit_check',
+    'section_import',
+    'import_acceptance',
+    'import_mapping',
+  ])('of %s sees nothing before a practice is set', async (table) => {
+    expect(await as(null, `select * from ${table}`)).toHaveLength(0);
+  });
 
   test('updates and deletes its own practice’s rows only', async () => {
     await as(ours.engineer, `update job set name = 'Renamed', version = version + 1`);

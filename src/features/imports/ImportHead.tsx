@@ -3,7 +3,7 @@ import { SheetHead } from '@/components/ui/SheetHead';
 import type { Fault } from '@/lib/app-error';
 import { paths } from '@/paths';
 import type { ImportView } from './imports';
-import { countWords, DELIMITER_WORDS, MARK_WORDS, sizeWords } from './words';
+import { countWords, DELIMITER_WORDS, ENCODING_WORDS, MARK_WORDS } from './words';
 
 interface ImportHeadProps {
   readonly view: ImportView;
@@ -64,12 +64,15 @@ function fieldOf(pointer: string): string {
   return name ? `${name.charAt(0).toUpperCase()}${name.slice(1)}: ` : '';
 }
 
-function factsOf({ rows, file, recognised }: ImportView, { columns, decimalMark }: ImportView['mapping']) {
+function factsOf(
+  { rows, recognised }: ImportView,
+  { columns, decimalMark, encoding }: ImportView['mapping'],
+) {
   return [
     { label: 'Rows', value: rows === null ? 'not counted yet' : countWords(rows) },
     { label: 'Columns', value: String(columns.length) },
     { label: 'Separator', value: DELIMITER_WORDS[recognised.delimiter] },
     { label: 'Decimal mark', value: decimalMark === null ? 'not said' : MARK_WORDS[decimalMark] },
-    { label: 'Size', value: sizeWords(file.bytes) },
+    { label: 'Encoding', value: encoding === null ? 'not said' : (ENCODING_WORDS[encoding] ?? encoding) },
   ];
 }

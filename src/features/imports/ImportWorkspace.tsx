@@ -11,6 +11,7 @@ import type { About, ImportView, TableChoice } from './imports';
 import { importApi } from './imports.api';
 import { Kept } from './Kept';
 import { useImport } from './use-import';
+import { LANGUAGE_WORDS } from './words';
 
 export interface ImportWorkspaceProps {
   readonly practice: string;
@@ -133,5 +134,7 @@ function matchedWords({ recognised, mapping }: ImportView): string {
   const matched = mapping.columns.filter(({ field }) => field !== null).length;
   const { remembered } = recognised;
   if (remembered) return `As ${remembered.supplier} was read last.`;
-  return `${matched} of ${mapping.columns.length} matched by name. Say what unit the file is in.`;
+  const language = recognised.language && LANGUAGE_WORDS[recognised.language];
+  const headings = language ? `, with ${language} headings` : '';
+  return `${matched} of ${mapping.columns.length} matched by name${headings}. Say what unit the file is in.`;
 }

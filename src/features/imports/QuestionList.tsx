@@ -2,16 +2,8 @@ import { useId } from 'react';
 import { ChoiceSet, Radio } from '@/components/ui/Choice';
 import type { Answer, Mapping, Question } from '@/features/section/import/contract';
 import { FIELDS } from './fields';
+import { ENCODING_WORDS } from './words';
 
-const ENCODING_WORDS: Readonly<Record<string, string>> = {
-  'utf-8': 'UTF-8',
-  'utf-16le': 'UTF-16',
-  'utf-16be': 'UTF-16, big end first',
-  'windows-1252': 'Western (Windows 1252)',
-  'windows-1251': 'Cyrillic (Windows 1251)',
-  'iso-8859-2': 'Central European (ISO 8859-2)',
-  macintosh: 'Macintosh',
-};
 const AXES_WORDS = { en: 'EN', us: 'US', british: 'British before 2005' } as const;
 const SHAPE_WORDS: Readonly<Record<string, string>> = {
   i: 'I and H sections',

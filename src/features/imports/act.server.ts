@@ -207,7 +207,7 @@ export const applyFixes = (
       fixes: [...row.fixes, ...records],
       version: row.version + 1,
     });
-    await record(tx, actor, row, 'fix', { fixes: made });
+    await record(tx, actor, row, 'fix', { fixes: made.map(({ label, edit }) => ({ label, edit })) });
   });
 
 type Chosen = Pick<FixRecord, 'label' | 'findings' | 'edit'>;
@@ -215,8 +215,9 @@ type Chosen = Pick<FixRecord, 'label' | 'findings' | 'edit'>;
 function chosenFixes(row: ImportRow, { apply, cells, leave_out }: Fixes): Chosen[] {
   const findings = findingsOf(row);
   const offered = apply.map(({ finding, fix }, index): Chosen => {
-    const chosen = findings.get(finding)?.fixes[fix];
-    if (!chosen)
+    const found = findings.get(finding);
+    const chosen = found?.fixes[fix];
+    if (!found || !chosen)
       throw invalid([
         {
           pointer: `/apply/${index}`,
@@ -224,19 +225,20 @@ function chosenFixes(row: ImportRow, { apply, cells, leave_out }: Fixes): Chosen
           message: 'The report does not offer this. Read it again.',
         },
       ]);
-    return { label: chosen.label, findings: [finding], edit: chosen.edit };
+    return { label: chosen.label, findings: [found], edit: chosen.edit };
   });
+  const all = [...findings.values()];
   const typed = cells.map(
     ({ line, column, value }): Chosen => ({
       label: `Line ${line}, “${row.mapping.columns[column]?.heading ?? ''}”: ${value}`,
-      findings: [],
+      findings: all.filter((one) => one.line === line && one.column === column),
       edit: { kind: 'set_cell', line, column, value },
     }),
   );
   const dropped = leave_out.map(
     (line): Chosen => ({
       label: `Leave out line ${line}`,
-      findings: [],
+      findings: all.filter((one) => one.line === line),
       edit: { kind: 'drop_row', line },
     }),
   );

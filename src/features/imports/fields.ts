@@ -1,5 +1,5 @@
 import { type DimensionName, unitText } from '@/engine/quantity';
-import type { Field, NumberField } from '@/features/section/import/contract';
+import type { Field } from '@/features/section/import/contract';
 import { offeredUnits } from '@/features/section/import/mapping';
 
 interface FieldWords {
@@ -45,8 +45,6 @@ export function unitsOf(field: Field | null, own: string | null): readonly strin
   if (own === null) return offered;
   return [own, ...offered.filter((one) => plain(one) !== plain(own))];
 }
-
-export const isNumber = (field: Field): field is NumberField => FIELDS[field].quantity !== null;
 
 /** "cm4" or "cm^4" as it is printed: "cm⁴". */
 export const unitWords = (unit: string): string => unitText(plain(unit));

@@ -7,6 +7,7 @@ import type {
   Edit,
   Encoding,
   Field,
+  Finding,
   Mapping,
   MappingEdit,
   Question,
@@ -35,8 +36,8 @@ export type CheckedReport = Report & { readonly version: number; readonly agains
 /** A change that was made, for the record. */
 export interface FixRecord {
   readonly label: string;
-  /** Keys of the findings that it answers; none where a cell was typed anew. */
-  readonly findings: readonly string[];
+  /** The findings that it answers, as they were: for the report. */
+  readonly findings: readonly Finding[];
   readonly edit: Edit | MappingEdit;
   readonly by: string;
   readonly at: string;
@@ -212,7 +213,13 @@ export type ImportProgress = z.output<typeof ImportProgress>;
 
 export const ImportReport = ImportView.omit({ fixes: true }).extend({
   fixes: z.array(
-    z.strictObject({ label: z.string(), edit: as<Edit | MappingEdit>(), by: z.string(), at: z.string() }),
+    z.strictObject({
+      label: z.string(),
+      findings: as<Finding[]>().describe('What it answers, as it was found'),
+      edit: as<Edit | MappingEdit>(),
+      by: z.string(),
+      at: z.string(),
+    }),
   ),
   /** Rules of the checks that found something. */
   rules: z.array(z.strictObject({ number: z.int(), words: z.string() })),

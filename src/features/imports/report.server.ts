@@ -15,7 +15,7 @@ export function readReport(actor: Actor, id: string): Promise<z.output<typeof Im
     const rules = [...new Set(view.report?.groups.map(({ rule }) => rule))].sort((a, b) => a - b);
     return {
       ...view,
-      fixes: fixes.map(({ label, edit, by, at }) => ({ label, edit, by, at })),
+      fixes: fixes.map(({ findings, ...one }) => ({ ...one, findings: [...findings] })),
       rules: rules.map((number) => ({ number, words: RULES[number] ?? '' })),
       left_out: facts?.heldLines ?? [],
     };

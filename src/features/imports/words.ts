@@ -30,6 +30,16 @@ export const LANGUAGE_WORDS: Readonly<Record<string, string>> = {
   sv: 'Swedish',
 };
 
+export const ENCODING_WORDS: Readonly<Record<string, string>> = {
+  'utf-8': 'UTF-8',
+  'utf-16le': 'UTF-16',
+  'utf-16be': 'UTF-16, big end first',
+  'windows-1252': 'Western (Windows 1252)',
+  'windows-1251': 'Cyrillic (Windows 1251)',
+  'iso-8859-2': 'Central European (ISO 8859-2)',
+  macintosh: 'Macintosh',
+};
+
 /** "columns_swapped" in a sentence. */
 export const causeWords = (cause: Cause): string => cause.replaceAll('_', ' ');
 

@@ -45,6 +45,7 @@ export const paths = {
   /** The form for a request, with the screen that it is raised from. */
   newRequest: (from: string) => `/library/requests/new?from=${encodeURIComponent(from)}`,
   sections: '/sections',
+  buildSection: '/sections/build',
   section: (table: string, designation: string) =>
     `/sections/${encodeURIComponent(table)}/${encodeURIComponent(designation)}`,
   jobs: '/jobs',

@@ -1,5 +1,6 @@
 import { Button } from '@/components/ui/Button';
 import type { UnitSystemName } from '@/engine/quantity';
+import { paths } from '@/paths';
 import { sectionsCsv } from './csv';
 import { FIELD_WORDS } from './display';
 import type { SectionField, SectionQuery } from './query';
@@ -65,6 +66,9 @@ export function ResultLine(props: ResultLineProps) {
           Rows {view.first} to {view.last} of {found}
         </span>
       )}
+      <a className="link" href={paths.buildSection}>
+        Make a section
+      </a>
       {all.whole && csv.rows.length > 0 && (
         <Button
           tone="text"

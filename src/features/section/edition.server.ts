@@ -103,3 +103,13 @@ export async function storedRowsHash(tx: Tx, practiceId: string, revisionId: str
     after = last.key;
   }
 }
+
+const COPIED = `table_slug, designation, designation_key, printed, shape, depth_mm, width_mm, mass_kg_m, area_cm2, i_major_cm4,
+  i_minor_cm4, w_el_cm3, w_el_minor_cm3, w_pl_cm3, w_pl_minor_cm3, j_cm4, iw_cm6, computed, dimensions`;
+
+/** The rows of one edition as those of another, which is still a draft. */
+export const copyRows = (tx: Tx, practiceId: string, from: string, to: string) =>
+  tx.execute(sql`
+    insert into section (practice_id, revision_id, ${sql.raw(COPIED)})
+    select practice_id, ${to}::uuid, ${sql.raw(COPIED)} from section
+    where practice_id = ${practiceId} and revision_id = ${from}`);

@@ -1,4 +1,3 @@
-import { sql } from 'drizzle-orm';
 import { withPractice } from '@/db/tenancy';
 import { requirePermission } from '@/features/account/permission';
 import { requireOnlyDraft } from '@/features/review/begin.server';
@@ -7,6 +6,7 @@ import { createDraft, takeStep } from '@/features/review/review.server';
 import { type Actor, requireRevision } from '@/features/review/rows.server';
 import { AppError } from '@/lib/app-error';
 import type { Restore } from './edition';
+import { copyRows } from './edition.server';
 
 /**
  * Goes back to a former edition: its rows become the next edition, which is sent to review at once. Nothing is taken
@@ -35,15 +35,9 @@ export async function restoreEdition(actor: Actor, key: RevisionKey, { reason, c
       consequence,
     });
     await requireOnlyDraft(tx, practiceId, draft);
-    await tx.execute(sql`
-      insert into section (practice_id, revision_id, ${sql.raw(COPIED)})
-      select practice_id, ${draft.revisionId}::uuid, ${sql.raw(COPIED)} from section
-      where practice_id = ${practiceId} and revision_id = ${former.id}`);
+    await copyRows(tx, practiceId, former.id, draft.revisionId);
     return draft;
   });
   const { number, state } = await takeStep(actor, made.revisionId, { step: 'submit' });
   return { number, state };
 }
-
-const COPIED = `table_slug, designation, designation_key, printed, shape, depth_mm, width_mm, mass_kg_m, area_cm2, i_major_cm4,
-  i_minor_cm4, w_el_cm3, w_el_minor_cm3, w_pl_cm3, w_pl_minor_cm3, j_cm4, iw_cm6, computed, dimensions`;

@@ -114,6 +114,8 @@ describe('the role that web and worker sign in with', () => {
       'remind-of-reviews': idle,
       'run-proof': idle,
       'run-impact': idle,
+      'run-import': idle,
+      'run-import': idle,
     };
     const queue = await workQueue(appUrl, handlers, () => undefined);
     await sender.send('sweep-sign-ins', {});

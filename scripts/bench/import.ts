@@ -7,7 +7,7 @@ import { addFindings, RowCheck, recognise, reportOf, Survey } from '../../src/fe
 import { RECOGNISED_BYTES } from '../../src/features/section/import/contract';
 
 /**
- * `npx tsx scripts/bench/import.ts [ROWS]`: a file of plausible sections of all kinds (100,000 where none is said) read
+ * `npm run bench:import -- [ROWS]`: a file of plausible sections of all kinds (100,000 where none is said) read
  * and checked in both passes, in pieces of 64 KB. States processor time and the most memory the process has held.
  */
 

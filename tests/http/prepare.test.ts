@@ -115,7 +115,6 @@ describe('the role that web and worker sign in with', () => {
       'run-proof': idle,
       'run-impact': idle,
       'run-import': idle,
-      'run-import': idle,
     };
     const queue = await workQueue(appUrl, handlers, () => undefined);
     await sender.send('sweep-sign-ins', {});

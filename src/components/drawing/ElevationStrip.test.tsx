@@ -73,7 +73,10 @@ describe('the elevation strip of a propped cantilever', () => {
     ];
     const enveloped = draw(PROPPED, { envelopes: { moment: { upper: moment, lower: moment, peaks } } });
     expect(
-      has(enveloped, 'largest shear 50.0 kN at A, largest moment of the envelope −112.0 kNm at A, from 1.4 D,'),
+      has(
+        enveloped,
+        'largest shear 50.0 kN at A, largest moment of the envelope −112.0 kNm at A, from 1.4 D,',
+      ),
     ).toBe(true);
   });
 

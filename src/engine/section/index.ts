@@ -17,7 +17,6 @@ export {
   type IDimensions,
   MEASURED_SHAPES,
   type MeasuredShape,
-  type OutlineDimensions,
   SECTION_SHAPES,
   type SectionDimensions,
   type SectionShape,

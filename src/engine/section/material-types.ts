@@ -20,7 +20,7 @@ export type MaterialCommon = {
 };
 
 /** Strength of steel up to a thickness, m; without limit where the standard has none. */
-export type StrengthBand = { upTo: number; fy: number; fu: number };
+type StrengthBand = { upTo: number; fy: number; fu: number };
 type Steel = MaterialCommon & { kind: 'steel'; strength: readonly StrengthBand[] };
 
 /** Characteristic strengths of a European strength class, Pa. */

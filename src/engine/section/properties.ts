@@ -44,7 +44,7 @@ export type SectionProperties = {
 };
 
 /** Second moments about the principal axes u (largest) and v, m⁴; u lies so many radians anticlockwise of the major axis. */
-export type PrincipalAxes = { iU: number; iV: number; angle: number };
+type PrincipalAxes = { iU: number; iV: number; angle: number };
 
 /**
  * Properties of a section from its dimensions. A, I and their axes: by rectangles and fillets (A = ΣA_i, I = Σ(I_i +

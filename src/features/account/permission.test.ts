@@ -18,7 +18,6 @@ const TABLE: Record<Action, [subject: Subject, allowed: string]> = {
   'library.withdraw': [{}, 'librarian principal'],
   'library.comment': [{}, 'engineer checker librarian principal'],
   'library.confirm': [{}, 'librarian'],
-  'library.import': [{}, 'librarian'],
   'library.set-review': [{}, 'librarian'],
   'library.import': [{}, 'librarian'],
   'library.trace': [{}, 'librarian principal'],

@@ -87,7 +87,7 @@ function AddParameter() {
   );
 }
 
-export function ParameterFields({ at }: { readonly at: Pointer }) {
+function ParameterFields({ at }: { readonly at: Pointer }) {
   const kind = useTextAt(`${at}/kind`);
   return (
     <>

@@ -6,7 +6,7 @@ import { applyEdits, type Edit, type Pointer, type StatedValues, valueAt } from 
 import { edited, type History, newHistory, redone, undone } from './history';
 import { type Conflict, decide } from './merge';
 
-export type Saving =
+type Saving =
   /** `at` is null until something was saved from this page. */
   | { readonly kind: 'saved'; readonly at: Date | null }
   | { readonly kind: 'waiting' }

@@ -57,7 +57,7 @@ export function addMadeSection(actor: Actor, row: SectionRow, source: string): P
     const open = (await openDraft(tx, practiceId)) ?? (await nextDraft(tx, actor));
     await requireNewName(tx, practiceId, open.id, row);
     await fillEdition(tx, { practiceId, revisionId: open.id, table: MADE.slug }, [row]);
-    await describe(tx, actor, open.id, `${row.printed}: ${source}`);
+    await sayRows(tx, actor, open.id, `${row.printed}: ${source}`);
     return open.number;
   });
 }
@@ -108,7 +108,7 @@ async function requireNewName(tx: Tx, practiceId: string, revisionId: string, { 
 }
 
 /** The draft says what its rows are now, and what was added. */
-async function describe(tx: Tx, actor: Actor, revisionId: string, added: string): Promise<void> {
+async function sayRows(tx: Tx, actor: Actor, revisionId: string, added: string): Promise<void> {
   const { practiceId, personId } = actor;
   const draft = await requireRevisionById(tx, practiceId, revisionId);
   const { count, sha256: rowsHash } = await storedRowsHash(tx, practiceId, revisionId);

@@ -9,10 +9,12 @@ const MM = 1000;
 /** A section as drawings take it: its true outline, and the axis letters of its table. */
 export function outlineOf(item: SectionItem, axes: EditionView['axes'], system: UnitSystemName) {
   const dimensions = dimensionsOf(item);
+  const { centroid, centroidUp } = sectionProperties(dimensions);
   return {
     name: shownName(item.designation),
     outline: outlinePath(dimensions),
     axes: axesOfTable(axes, system),
-    minorAt: sectionProperties(dimensions).centroid * MM,
+    minorAt: centroid * MM,
+    majorAt: centroidUp * MM,
   };
 }

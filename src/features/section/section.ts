@@ -11,7 +11,7 @@ const MAX_RINGS = 24;
 const ring = z.array(z.strictObject({ z: z.number(), y: z.number(), r: radius })).max(MAX_CORNERS);
 
 /** Dimensions in m, as the engine takes them. */
-export const sectionDimensionsSchema = z.discriminatedUnion('shape', [
+const sectionDimensionsSchema = z.discriminatedUnion('shape', [
   z.strictObject({ shape: z.literal('i'), ...flanged }),
   z.strictObject({ shape: z.literal('channel'), ...flanged }),
   z.strictObject({ shape: z.literal('tee'), ...flanged }),
@@ -113,7 +113,7 @@ export function itemDimensions(d: SectionDimensions): Pick<SectionItem, 'dimensi
     case 'outline':
     case 'values':
       return {
-        dimensions_mm: { h: toMm(depthOf(d)), b: toMm(widthOf(d)), t: toMm(d.t) },
+        dimensions_mm: { h: toMm(depthOf(d)), b: toMm(widthOf(d)) },
         dimensions_si: d,
       };
     case 'tapered_i':

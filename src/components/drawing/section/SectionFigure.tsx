@@ -6,10 +6,10 @@ import type { OutlinedSection } from './outlined';
 type Props = { section: OutlinedSection; scale: number; cx: number; ground: number; format: DrawingFormat };
 
 function Axes({ section, scale, cx, ground }: Omit<Props, 'format'>) {
-  const { outline, axes, minorAt } = section;
+  const { outline, axes, minorAt, majorAt } = section;
   const [half, tall] = [(outline.width * scale) / 2, outline.height * scale];
   const minor = cx - half + (minorAt ?? outline.width / 2) * scale;
-  const middle = ground - tall / 2;
+  const middle = ground - (majorAt ?? outline.height / 2) * scale;
   const left = { x: cx - half - 12, textAnchor: 'end', className: 'note' } as const;
   return (
     <>

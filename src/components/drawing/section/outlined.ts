@@ -7,6 +7,8 @@ export type OutlinedSection = {
   axes: { major: string; minor: string };
   /** The minor axis from the left edge, mm, where it is not in the middle, as in a channel. */
   minorAt?: number | undefined;
+  /** The major axis from the bottom, mm, where it is not in the middle, as in a tee. */
+  majorAt?: number | undefined;
 };
 
 /** px per mm at which every section of a row fits its slot; all are drawn at this one scale. */

@@ -1,4 +1,4 @@
-import { type FormEvent, useState } from 'react';
+import { type SyntheticEvent, useState } from 'react';
 import { Button } from '@/components/ui/Button';
 import type { Finding } from '@/features/section/import/contract';
 import { mayAccept } from '@/features/section/import/report';
@@ -143,7 +143,7 @@ interface OneFieldProps {
 /** A field and its button, in the line. */
 export function OneField({ label, word, start, least = 0, onGiven }: OneFieldProps) {
   const [value, setValue] = useState(start);
-  const send = (event: FormEvent) => {
+  const send = (event: SyntheticEvent) => {
     event.preventDefault();
     if (value.trim().length >= least) onGiven(value.trim());
   };

@@ -87,7 +87,7 @@ export const recentGroups = (recent: readonly string[]): Group[] =>
     : [];
 
 /** How many there are, in words, for whoever does not see the list. */
-export function countWords({ total, instead }: SearchView): string {
+export function countWords({ total, instead }: Pick<SearchView, 'total' | 'instead'>): string {
   if (total === 0) return '';
   const found = total === 1 ? '1 found' : `${total} found`;
   const [first] = instead;

@@ -24,12 +24,14 @@ export const MADE = {
 } as const;
 
 /** The section of an issued table that a made one starts from; 422 at `beam` where there is none. */
-export function beamOf(user: User, designation: string): Promise<ChosenSection> {
+export async function beamOf(user: User, designation: string): Promise<ChosenSection> {
   requirePermission(user, 'library.read');
-  return withPractice(user, (tx) => chooseSection(tx, user.practiceId, { designation })).catch((error) => {
+  try {
+    return await withPractice(user, (tx) => chooseSection(tx, user.practiceId, { designation }));
+  } catch (error) {
     if (!(error instanceof AppError) || error.faults.length === 0) throw error;
     throw invalid(error.faults.map((fault) => ({ ...fault, pointer: '/beam' })));
-  });
+  }
 }
 
 const metaOf = (edition: number, day: string): SectionTableMeta => ({

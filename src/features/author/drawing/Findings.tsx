@@ -3,9 +3,9 @@ import type { Fault } from '@/engine/model';
 import type { UnitSystemName } from '@/engine/quantity';
 import { useRestedValue } from '@/features/template/use-live';
 import type { EditorState } from '../edit';
+import type { BeamReading } from './beam-reading';
 import { Preview } from './Preview';
 import { Releases } from './Releases';
-import type { BeamReading } from './releases';
 import type { Sketch } from './sketch';
 import type { StageLayout } from './stage-layout';
 

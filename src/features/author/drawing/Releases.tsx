@@ -15,7 +15,7 @@ import {
   releaseMechanism,
 } from '@/engine/model';
 import { type EditorState, listAt, textAt } from '../edit';
-import { setRedundants } from './releases';
+import { setRedundants } from './beam-reading';
 import type { Sketch } from './sketch';
 
 interface ReleasesProps {

@@ -6,9 +6,9 @@ import { type Added, affectAll, freshId, parameter } from '../add';
 import { type DraftSteps, plus } from '../draft-steps';
 import { listAt, type Pointer, textAt } from '../edit';
 import { COUPLE, CURVATURE, type NewParameter, PLACE, POINT, TRIANGULAR, UNIFORM } from '../entries';
+import { changing } from './beam-reading';
 import { relettered } from './letters';
 import { type Bay, bayAt, baysOf, type Place } from './places';
-import { changing } from './releases';
 import type { Sketch } from './sketch';
 
 export const AT_A_PLACE = ['pin', 'roller', 'fixed', 'guided', 'spring', 'hinge', 'point', 'couple'] as const;

@@ -8,9 +8,9 @@ import type { DraftSteps } from '../draft-steps';
 import { type Edit, keysOf, listAt, type Pointer, type StatedValues, textAt, valueAt } from '../edit';
 import { type NewParameter, SETTLEMENT } from '../entries';
 import { isNew, placed, ruleOf, SPRING, type Target } from './add';
+import { changing } from './beam-reading';
 import { mentionsOf, relettered } from './letters';
 import { linearOf } from './linear';
-import { changing } from './releases';
 import type { Sketch } from './sketch';
 
 const isOnBeam = (pointer: Pointer): boolean =>

@@ -7,6 +7,7 @@ import { applyEdits, type Edit, listAt, textAt, valueAt } from '../edit';
 import { startDocument } from '../start';
 import { addUsualRules } from '../usual-rules';
 import { addAt, addOver, newPlaceAt, type PlaceTool, wholeOf } from './add';
+import { beamOf } from './beam-reading';
 import {
   choiceOf,
   draggedTo,
@@ -19,7 +20,6 @@ import {
 } from './change';
 import { drawnOf } from './parts';
 import { type Place, placesOf, snapped } from './places';
-import { beamOf } from './releases';
 import { type Sketch, sketchOf } from './sketch';
 
 const edited = (document: Written, edits: readonly Edit[]): Written => applyEdits(document, edits).document;

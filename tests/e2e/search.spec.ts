@@ -7,7 +7,7 @@ test.setTimeout(90_000);
 
 const field = (page: Page) => page.getByRole('combobox', { name: 'Search everything' });
 const chosen = (page: Page) => page.locator('[role="option"][aria-selected="true"]');
-const answers = (page: Page) => page.getByRole('listbox', { name: 'Answers' });
+const answers = (page: Page) => page.getByRole('listbox', { name: 'What is found' });
 
 /** A page that was opened listens by then. */
 async function arrive(page: Page, address: RegExp): Promise<void> {

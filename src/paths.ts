@@ -89,6 +89,9 @@ export const paths = {
     audit: '/api/v1/audit',
     auditExport: '/api/v1/audit/export',
     sections: '/api/v1/sections',
+    sectionSpread: '/api/v1/sections/spread',
+    section: (table: string, designation: string) =>
+      `/api/v1/sections/${encodeURIComponent(table)}/${encodeURIComponent(designation)}`,
     imports: '/api/v1/imports',
     import: (id: string) => `/api/v1/imports/${encodeURIComponent(id)}`,
     search: '/api/v1/search',

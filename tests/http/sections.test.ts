@@ -12,6 +12,7 @@ import {
   toSectionQuery,
 } from '@/features/section/query';
 import { type SectionItem, sectionTableMetaSchema, toSectionItem } from '@/features/section/section';
+import { spreadSchema } from '@/features/section/spread';
 import { ask } from '../support/app';
 import { foundPractice } from '../support/practice';
 
@@ -157,6 +158,86 @@ describe('a cursor', () => {
     const { items } = await walk({ sort }, 97);
     expect(items.length).toBe(shipped.length);
     expect(new Set(names(items)).size).toBe(shipped.length);
+  });
+});
+
+describe('the spread of depth and mass', () => {
+  const spread = (query: Query, by = token) =>
+    ask('GET', `/api/v1/sections/spread?${new URLSearchParams(query)}`, { token: by });
+  const OWN = {
+    depth: { field: 'depth_mm', ends: ['depth_min', 'depth_max', 'depth_mm_min', 'depth_mm_max'] },
+    mass: { field: 'mass_kg_m', ends: ['mass_min', 'mass_max', 'mass_kg_m_min', 'mass_kg_m_max'] },
+  } as const;
+  const isRange = (name: string) => /_(min|max)$/.test(name);
+  const answers = (query: Query, keep: (name: string) => boolean) =>
+    selectSections(
+      shipped,
+      toSectionQuery(
+        z
+          .strictObject(sectionQueryFields)
+          .parse(Object.fromEntries(Object.entries(query).filter(([name]) => keep(name)))),
+      ),
+    );
+
+  test.each<[string, Query]>([
+    ['everything', {}],
+    ['≤ 310 deep, ≤ 45 kg/m', { depth_max: '310', mass_max: '45' }],
+    ['between ends that sections have', { depth_min: '203', depth_max: '310' }],
+    ['wide flange of W12', { q: 'w12', depth_min: '300', depth_max: '320' }],
+    ['hollow, stiff, of one table or none', { shape: 'hollow', i_major_min: '5000', mass_max: '100' }],
+    ['by their long names', { table: 'european-i', width_mm_min: '100', depth_mm_max: '300' }],
+    ['a slip of the finger', { q: 'w12x27', mass_max: '40' }],
+  ])('%s: each bin has what an exhaustive count puts there', async (_, query) => {
+    const { status, json } = await spread(query);
+    expect([status, json.errors]).toEqual([200, undefined]);
+    const found = spreadSchema.parse(json);
+    const base = answers(query, (name) => !isRange(name));
+    // A spread of nothing would agree with anything.
+    expect(base.length).toBeGreaterThan(0);
+    const ranged = answers(query, () => true);
+    const names = new Set(base.map(({ table, designation }) => `${table} ${designation}`));
+    const meeting = ranged.filter(({ table, designation }) => names.has(`${table} ${designation}`));
+    for (const measure of ['depth', 'mass'] as const) {
+      const { bin, all, meeting: met, within } = found[measure];
+      const { field, ends } = OWN[measure];
+      const inBin = (items: readonly SectionItem[], i: number) =>
+        items.filter((item) => {
+          const at = item[field] / bin + 1e-9;
+          return at >= i && (at < i + 1 || i === all.length - 1);
+        }).length;
+      expect(all).toEqual(all.map((__, i) => inBin(base, i)));
+      expect(met).toEqual(all.map((__, i) => inBin(meeting, i)));
+      const own = answers(query, (name) => !isRange(name) || (ends as readonly string[]).includes(name));
+      expect(within).toBe(own.filter((item) => names.has(`${item.table} ${item.designation}`)).length);
+    }
+  });
+
+  test('has bins that are round in inches for who reads inches', async () => {
+    const { json } = await spread({ system: 'us' });
+    expect(json.depth.bin / 25.4).toBeCloseTo(Math.round((json.depth.bin / 25.4) * 2) / 2, 9);
+    expect(json.depth.all.length).toBeLessThanOrEqual(64);
+    expect(json.depth.all.reduce((sum: number, one: number) => sum + one, 0)).toBe(shipped.length);
+  });
+
+  test('keeps the axis of every section where a designation is like no other', async () => {
+    const everything = (await spread({})).json;
+    const { json } = await spread({ q: 'qqqqq 98765' });
+    expect([json.depth.bin, json.depth.all.length]).toEqual([
+      everything.depth.bin,
+      everything.depth.all.length,
+    ]);
+    expect([...json.depth.all, json.depth.within].every((one: number) => one === 0)).toBe(true);
+  });
+
+  test('is refused with its place where the query cannot be read, and to nobody', async () => {
+    const { status, json } = await spread({ depth_min: 'tall' });
+    expect([status, json.errors[0].pointer]).toEqual([422, '/depth_min']);
+    expect((await ask('GET', '/api/v1/sections/spread')).status).toBe(401);
+  });
+
+  test('tells another practice nothing', async () => {
+    const { json } = await spread({}, stranger);
+    expect([json.depth.all, json.mass.within]).toEqual([[0], 0]);
   });
 });
 

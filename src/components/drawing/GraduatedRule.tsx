@@ -2,7 +2,8 @@ import { type KeyboardEvent, type PointerEvent, useMemo } from 'react';
 import { firstRowAt, graduationsOf, rowY } from './histogram/graduations';
 
 export type GraduatedRuleProps = {
-  /** The sort column of every row, in the schedule's order and the unit shown. */
+  rows: number;
+  /** The sort column in the schedule's order and the unit shown: of every row, or of rows evenly spaced. */
   column: readonly number[];
   unit: string;
   /** The rows in view. */
@@ -33,8 +34,8 @@ function rowByKey(key: string, first: number, size: number, rows: number): numbe
 }
 
 /** The scroll bar of a sorted schedule, as a scale of the sort column; the ochre block is the window. */
-export function GraduatedRule({ column, unit, first, size, height, controls, onFirst }: GraduatedRuleProps) {
-  const rows = column.length;
+export function GraduatedRule(props: GraduatedRuleProps) {
+  const { rows, column, unit, first, size, height, controls, onFirst } = props;
   const [top, bottom] = [HEAD, Math.max(HEAD + 40, height - FOOT)];
   const { ticks, marks } = useMemo(() => graduationsOf(column, top, bottom), [column, top, bottom]);
   const [from, to] = [
@@ -77,7 +78,7 @@ export function GraduatedRule({ column, unit, first, size, height, controls, onF
         <path className="fine" d={`M14 ${top}V${bottom}${ticks.map((y) => `M14 ${y}h4`).join('')}`} />
         <path className="thin" d={marks.map(({ y }) => `M14 ${y}h10`).join('')} />
         {marks.map(({ y, label }) => (
-          <text key={label} x={28} y={y + 4} className="axis">
+          <text key={y} x={28} y={y + 4} className="axis">
             {label}
           </text>
         ))}

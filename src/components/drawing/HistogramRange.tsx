@@ -1,24 +1,19 @@
 import { type KeyboardEvent, type PointerEvent, useMemo, useRef } from 'react';
+import { roundStep } from '@/lib/round-step';
 import { hatchOf, rectangle } from './geometry/hatch';
-import { roundStep } from './geometry/scale';
-import {
-  type Bins,
-  type Cursor,
-  countsOf,
-  countWithin,
-  keyedRange,
-  movedTo,
-  type Range,
-} from './histogram/histogram';
+import { type Bins, type Cursor, keyedRange, movedTo, type Range } from './histogram/histogram';
 import { ticksPath } from './marks/paths';
 import { plumbPath } from './strip/plumb-path';
 import { useWidth } from './use-width';
 
 export type HistogramRangeProps = {
-  /** Every value of the column, and those of the rows that meet every range; in the unit that is shown. */
-  values: readonly number[];
-  meeting: readonly number[];
+  /** In the unit that is shown. */
   bins: Bins;
+  /** Rows by bin: all of them, and those that meet every range. */
+  all: readonly number[];
+  meeting: readonly number[];
+  /** Rows between the cursors. */
+  count: number;
   range: Range;
   onRange: (range: Range) => void;
   step: number;
@@ -51,13 +46,11 @@ function scaleOf({ from, to }: Bins, width: number): Scale {
 }
 
 function Bars({
-  values,
+  all,
   meeting,
   bins,
   scale: { toX },
-}: Pick<HistogramRangeProps, 'values' | 'meeting' | 'bins'> & { scale: Scale }) {
-  const all = countsOf(values, bins);
-  const chosen = countsOf(meeting, bins);
+}: Pick<HistogramRangeProps, 'all' | 'meeting' | 'bins'> & { scale: Scale }) {
   const perRow = TALLEST / Math.max(1, ...all);
   const box = (count: number, i: number) => {
     const left = toX(bins.from + i * bins.bin) + 1;
@@ -69,7 +62,7 @@ function Bars({
       const { left, width, height } = box(count, i);
       return count === 0 ? '' : `M${left} ${BASE}v${-height}h${width}v${height}`;
     });
-  const hatch = chosen.map((count, i) => {
+  const hatch = meeting.map((count, i) => {
     const { left, width, top, height } = box(count, i);
     return count === 0 ? '' : hatchOf(rectangle(left, top, width, height), -45, 5);
   });
@@ -77,7 +70,7 @@ function Bars({
     <>
       <path className="medium-rule" d={outline(all).join('')} />
       <path className="chosen-hatch" d={hatch.join('')} />
-      <path className="chosen-bar" d={outline(chosen).join('')} />
+      <path className="chosen-bar" d={outline(meeting).join('')} />
     </>
   );
 }
@@ -153,20 +146,20 @@ function CursorMark({ cursor, scale, ...props }: HistogramRangeProps & { cursor:
 
 /** A column's histogram: rows that meet every range are hatched, and two cursors set the range of this one. */
 export function HistogramRange(props: HistogramRangeProps) {
-  const { values, meeting, bins, range, name, unit, within } = props;
+  const { all, meeting, count, bins, range, name, unit, within } = props;
   const host = useRef<HTMLDivElement>(null);
   const width = useWidth(host, 420);
   const scale = useMemo(() => scaleOf(bins, width), [bins, width]);
-  const count = countWithin(values, range);
   const [low, high] = [scale.toX(range.low), scale.toX(range.high)];
   const bars = useMemo(
-    () => <Bars values={values} meeting={meeting} bins={bins} scale={scale} />,
-    [values, meeting, bins, scale],
+    () => <Bars all={all} meeting={meeting} bins={bins} scale={scale} />,
+    [all, meeting, bins, scale],
   );
+  const met = meeting.reduce((sum, rows) => sum + rows, 0);
   return (
     <div ref={host}>
       <svg className="drawing" viewBox={`0 0 ${width} ${HEIGHT}`}>
-        <title>{`${name}, ${unit}: ${count} ${within}, ${meeting.length} of them meet every range`}</title>
+        <title>{`${name}, ${unit}: ${count} ${within}, ${met} of them meet every range`}</title>
         {bars}
         <Axis bins={bins} scale={scale} />
         <path className="selection" d={`M${low} ${LINE}H${high}`} />

@@ -1,5 +1,4 @@
 import { useMemo } from 'react';
-import { roundStep } from '@/components/drawing/geometry/scale';
 import { HistogramRange } from '@/components/drawing/HistogramRange';
 import { type Bins, shifted } from '@/components/drawing/histogram/histogram';
 import { RichHtml } from '@/components/drawing/marks/RichHtml';
@@ -7,37 +6,34 @@ import type { UnitSystemName } from '@/engine/quantity';
 import { type Bound, type PageState, withBound } from './address';
 import { FIELD_WORDS, fromShown, richUnitOf, toShown, unitOf } from './display';
 import { NumberBound } from './NumberBound';
-import { measureOf } from './query';
-import type { SectionItem } from './section';
-
-export type Ranged = 'depth' | 'mass';
+import { RANGED_FIELD as FIELD, type MeasureSpread, type Ranged } from './spread';
 
 interface RangeFilterProps {
   readonly measure: Ranged;
   readonly state: PageState;
   readonly system: UnitSystemName;
-  /** Every section: the axis is theirs where none is left. */
-  readonly items: readonly SectionItem[];
-  /** The sections before any range, and those that meet every range. */
-  readonly base: readonly SectionItem[];
-  readonly meeting: readonly SectionItem[];
+  readonly spread: MeasureSpread;
   readonly onBound: (bounds: readonly (readonly [Bound, number | null])[]) => void;
 }
 
-const FIELD = { depth: 'depth_mm', mass: 'mass_kg_m' } as const;
 const NUDGE = { depth: { metric: 1, us: 0.25 }, mass: { metric: 1, us: 1 } } as const;
-const BARS = 32;
+const FIGURES = 9; // a bound in the unit shown, without the last bits of its conversion
 
-function binsOf(values: readonly number[]): Bins {
-  const bin = roundStep(Math.max(1, ...values) / BARS);
-  return { from: 0, to: bin * Math.max(1, Math.ceil(Math.max(0, ...values) / bin)), bin };
-}
+const shown = (measure: Ranged, value: number, system: UnitSystemName): number =>
+  Number(toShown(FIELD[measure], value, system).toPrecision(FIGURES));
+
+/** The bins in the unit shown. */
+const binsOf = ({ bin, all }: MeasureSpread, measure: Ranged, system: UnitSystemName): Bins => ({
+  from: 0,
+  to: shown(measure, bin * all.length, system),
+  bin: shown(measure, bin, system),
+});
 
 /** The range that the cursors stand at, in the unit shown; an end without a bound is the histogram's. */
 function rangeOf(state: PageState, measure: Ranged, bins: Bins, system: UnitSystemName) {
   const at = (end: 'min' | 'max', open: number) => {
     const bound = state.bounds[`${measure}_${end}`];
-    return bound === undefined ? open : Number(toShown(FIELD[measure], bound, system).toPrecision(9));
+    return bound === undefined ? open : shown(measure, bound, system);
   };
   const low = Math.min(at('min', bins.from), bins.to);
   return { low: Math.max(bins.from, low), high: Math.max(low, Math.min(bins.to, at('max', bins.to))) };
@@ -57,19 +53,16 @@ function boundsOf(
   ];
 }
 
-const shownValues = (items: readonly SectionItem[], measure: Ranged, system: UnitSystemName): number[] =>
-  items.map((item) => toShown(FIELD[measure], measureOf(item, FIELD[measure]) ?? 0, system));
-
 const NUDGES = 10; // steps
 
 /** The range of depth moved by some steps, its width kept; an open end stays open. */
 export function nudged(
   state: PageState,
-  items: readonly SectionItem[],
+  spread: MeasureSpread,
   turn: 1 | -1,
   system: UnitSystemName,
 ): PageState {
-  const bins = binsOf(shownValues(items, 'depth', system));
+  const bins = binsOf(spread, 'depth', system);
   const { depth_min: least, depth_max: most } = state.bounds;
   const range = rangeOf(state, 'depth', bins, system);
   if (least === undefined && most === undefined) return state;
@@ -89,14 +82,9 @@ export function nudged(
 }
 
 /** Depth or mass: two cursors over a histogram, and a field at each end that does the same. */
-export function RangeFilter({ measure, state, system, items, base, meeting, onBound }: RangeFilterProps) {
+export function RangeFilter({ measure, state, system, spread, onBound }: RangeFilterProps) {
   const field = FIELD[measure];
-  const values = useMemo(() => shownValues(base, measure, system), [base, measure, system]);
-  const met = useMemo(() => shownValues(meeting, measure, system), [meeting, measure, system]);
-  const bins = useMemo(
-    () => binsOf(values.length > 0 ? values : shownValues(items, measure, system)),
-    [values, items, measure, system],
-  );
+  const bins = useMemo(() => binsOf(spread, measure, system), [spread, measure, system]);
   const bound = (end: 'min' | 'max', word: string) => (
     <NumberBound
       label={`${word} ${measure}`}
@@ -122,8 +110,9 @@ export function RangeFilter({ measure, state, system, items, base, meeting, onBo
         </span>
       </div>
       <HistogramRange
-        values={values}
-        meeting={met}
+        all={spread.all}
+        meeting={spread.meeting}
+        count={spread.within}
         bins={bins}
         range={rangeOf(state, measure, bins, system)}
         onRange={(range) => onBound(boundsOf(range, measure, bins, system))}

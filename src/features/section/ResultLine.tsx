@@ -1,22 +1,20 @@
 import { Button } from '@/components/ui/Button';
 import type { UnitSystemName } from '@/engine/quantity';
 import { paths } from '@/paths';
+import type { Answer } from './answer';
+import { COLUMN_FIELDS } from './columns';
 import { sectionsCsv } from './csv';
 import { FIELD_WORDS } from './display';
-import type { SectionField, SectionQuery } from './query';
-import type { SectionItem } from './section';
-import type { AllSections } from './use-all-sections';
+import type { SectionQuery } from './query';
 
 interface ResultLineProps {
-  readonly found: number;
+  readonly answer: Answer;
+  /** How many sections the practice has. */
   readonly of: number;
   readonly view: { readonly first: number; readonly last: number };
-  readonly all: AllSections;
-  readonly query: SectionQuery;
   readonly system: UnitSystemName;
   /** Nothing is called as was typed; these are only like it. */
   readonly nearest: boolean;
-  readonly csv: { readonly rows: readonly SectionItem[]; readonly fields: readonly SectionField[] };
   readonly said: string;
   readonly onSaid: (words: string) => void;
 }
@@ -29,19 +27,23 @@ function orderWords({ q, sort }: SectionQuery): string {
   return `${sort.descending ? 'greatest' : 'least'} ${name} first`;
 }
 
-function countWords({ found, of, nearest, query, all }: ResultLineProps): [string, string] {
-  if (!all.whole) return [String(found), 'sections found'];
+function countWords({ answer: { total, query }, of, nearest }: ResultLineProps): [string, string] {
   if (nearest) return ['', `No section is called “${query.q}”. The nearest:`];
-  return [String(found), `of ${of} meet every range`];
+  return [String(total), `of ${of} meet every range`];
 }
 
 /** How many there are, in which order, which of them are in view; and the way to take them along. */
 export function ResultLine(props: ResultLineProps) {
-  const { view, all, query, said, onSaid, found, csv, system } = props;
+  const { view, answer, said, onSaid, system } = props;
+  const { rows, total, query } = answer;
   const [count, words] = countWords(props);
   const copy = async () => {
-    await navigator.clipboard.writeText(sectionsCsv(csv.rows, csv.fields, system));
-    onSaid(`${csv.rows.length} rows are copied as CSV.`);
+    await navigator.clipboard.writeText(sectionsCsv(rows, COLUMN_FIELDS, system));
+    onSaid(
+      rows.length < total
+        ? `The first ${rows.length} of ${total} rows are copied as CSV, those read so far. Scroll down to read more.`
+        : `${rows.length} rows are copied as CSV.`,
+    );
   };
   return (
     <div className="flex min-h-34 flex-wrap items-center gap-x-18 gap-y-4 border-b border-rule px-(--pad) py-6 text-schedule">
@@ -49,11 +51,11 @@ export function ResultLine(props: ResultLineProps) {
         <b className="font-semibold">{count}</b> <span className="text-ink-2">{words}</span>
       </p>
       <span className="text-ink-2">{orderWords(query)}</span>
-      {!all.whole && !all.failure && <span className="text-ink-2">Reading the tables</span>}
-      {all.failure && (
+      {answer.isReading && <span className="text-ink-2">Reading the tables</span>}
+      {answer.failure && (
         <span role="alert" className="flex items-center gap-10 font-semibold text-error">
-          {all.failure}
-          <Button tone="text" onClick={all.again}>
+          {answer.failure}
+          <Button tone="text" onClick={answer.again}>
             Try again
           </Button>
         </span>
@@ -61,15 +63,15 @@ export function ResultLine(props: ResultLineProps) {
       <span role="status" className="text-ink-2">
         {said}
       </span>
-      {found > 0 && view.last > 0 && (
+      {total > 0 && view.last > 0 && (
         <span className="ml-auto text-ink-2">
-          Rows {view.first} to {view.last} of {found}
+          Rows {view.first} to {view.last} of {total}
         </span>
       )}
       <a className="link" href={paths.buildSection}>
         Make a section
       </a>
-      {all.whole && csv.rows.length > 0 && (
+      {rows.length > 0 && (
         <Button
           tone="text"
           onClick={() =>

@@ -8,29 +8,26 @@ import { NumberBound } from './NumberBound';
 import type { SectionField } from './query';
 import { RangeFilter } from './RangeFilter';
 import { ShapeFilter } from './ShapeFilter';
-import type { SectionItem } from './section';
+import type { Spread } from './spread';
 
 interface SectionFiltersProps {
   readonly state: PageState;
   readonly onState: (change: (state: PageState) => PageState) => void;
   readonly system: UnitSystemName;
   readonly editions: readonly EditionView[];
-  readonly items: readonly SectionItem[];
-  readonly base: readonly SectionItem[];
-  readonly meeting: readonly SectionItem[];
+  readonly spread: Spread;
 }
 
 /** The head of the sections page: what a section is asked to be. */
 export function SectionFilters(props: SectionFiltersProps) {
-  const { state, onState, system, items, base, meeting } = props;
-  const ranges = { state, system, items, base, meeting };
+  const { state, onState, system, spread } = props;
   const onBound = (bounds: readonly (readonly [Bound, number | null])[]) =>
     onState((before) => bounds.reduce((now, [name, value]) => withBound(now, name, value), before));
   return (
     <search className="grid border-b-2 border-ink lg:grid-cols-[238px_minmax(0,1fr)_minmax(0,1fr)_292px] md:max-lg:grid-cols-2">
       <Designation {...props} />
-      <RangeFilter measure="depth" {...ranges} onBound={onBound} />
-      <RangeFilter measure="mass" {...ranges} onBound={onBound} />
+      <RangeFilter measure="depth" {...{ state, system, onBound }} spread={spread.depth} />
+      <RangeFilter measure="mass" {...{ state, system, onBound }} spread={spread.mass} />
       <Requirements state={state} system={system} onBound={onBound} onState={onState} />
     </search>
   );

@@ -2,88 +2,128 @@ import { useCallback, useMemo, useState } from 'react';
 import { Button } from '@/components/ui/Button';
 import { useKeys } from '@/components/ui/use-keys';
 import type { UnitSystemName } from '@/engine/quantity';
-import { EMPTY, keyOf, type PageState, withSort } from './address';
+import { EMPTY, type PageState, withSort } from './address';
+import type { Answer, FirstAnswer } from './answer';
 import { Comparison } from './Comparison';
-import { COLUMN_FIELDS } from './columns';
 import { EditionBlock } from './EditionBlock';
 import type { EditionView } from './edition';
 import { PinTray } from './PinTray';
 import { ResultLine } from './ResultLine';
 import { SectionFilters } from './SectionFilters';
 import { SectionTable } from './SectionTable';
-import type { SectionItem } from './section';
+import { useAddress } from './use-address';
+import { useAnswerHere } from './use-all-sections';
 import { useSearch } from './use-search';
+import { useServerAnswer } from './use-server-answer';
 
 export interface SectionSearchProps {
   readonly practice: string;
   readonly system: UnitSystemName;
   /** The page's own query, and what the server found for it. */
   readonly search: string;
-  readonly first: readonly SectionItem[];
-  readonly total: number;
+  readonly first: FirstAnswer;
+  /** How many sections the practice has. */
+  readonly library: number;
   readonly editions: readonly EditionView[];
   /** How many members use a section, by its key. */
   readonly uses: readonly (readonly [string, number])[];
 }
 
+/** Of a library no longer than this every row is read into the browser. */
+const MOST_HERE = 5000;
+
 /** The sections page: filters, the schedule they leave, and what is pinned of it. */
-export function SectionSearch(props: SectionSearchProps) {
-  const { system, editions, practice } = props;
-  const found = useSearch(props);
-  const { state, setState, all, query, rows, chosen, pinned } = found;
+export const SectionSearch = (props: SectionSearchProps) =>
+  props.library > MOST_HERE ? <SearchedByServer {...props} /> : <SearchedHere {...props} />;
+
+function SearchedByServer(props: SectionSearchProps) {
+  const [state, setState] = useAddress(props.search);
+  const answer = useServerAnswer(state, props.first, props.system);
+  return <Search {...props} {...{ state, setState, answer }} />;
+}
+
+function SearchedHere(props: SectionSearchProps) {
+  const [state, setState] = useAddress(props.search);
+  const answer = useAnswerHere(state, props.first, props.system);
+  return <Search {...props} {...{ state, setState, answer }} />;
+}
+
+interface SearchProps extends SectionSearchProps {
+  readonly state: PageState;
+  readonly setState: (change: (state: PageState) => PageState) => void;
+  readonly answer: Answer;
+}
+
+function Search(props: SearchProps) {
+  const { system, editions, practice, state, setState, answer } = props;
+  const found = useSearch(answer, state, setState, system);
+  const { chosen } = found;
   useKeys({
     p: () => chosen && found.pin(chosen),
     '[': () => found.nudge(-1),
     ']': () => found.nudge(1),
   });
-  const [view, setView] = useState({ first: 1, last: 0 });
-  const onView = useCallback((first: number, last: number) => setView({ first, last }), []);
-  const uses = useMemo(() => new Map(props.uses), [props.uses]);
-
   return (
     <>
-      <SectionFilters
-        {...{ state, system, editions }}
-        items={found.items}
-        base={found.base}
-        meeting={rows}
-        onState={setState}
-      />
-      <ResultLine
-        {...{ view, all, query, system }}
-        said={found.said}
-        nearest={found.nearest}
-        found={all.whole ? rows.length : props.total}
-        of={found.items.length}
-        csv={{ rows, fields: COLUMN_FIELDS }}
-        onSaid={found.setSaid}
-      />
-      {rows.length === 0 && all.whole ? (
-        <NoSection state={state} onClear={() => setState({ ...EMPTY, pins: state.pins })} />
-      ) : (
-        <SectionTable
-          {...{ rows, query, system, uses, onView }}
-          pins={state.pins}
-          chosen={chosen && keyOf(chosen)}
-          onChoose={found.choose}
-          onPin={found.pin}
-          onSort={(name) => setState((before) => withSort(before, name))}
-        />
-      )}
+      <SectionFilters {...{ state, system, editions }} spread={answer.spread} onState={setState} />
+      <Schedule {...props} found={found} />
       <div className="grid flex-1 border-t-2 border-ink lg:grid-cols-[minmax(0,1fr)_414px_var(--title-column)] md:max-lg:grid-cols-[minmax(0,1fr)_var(--title-column)] [&>*]:border-ink [&>.zone]:border-t-0 lg:[&>*+*]:border-l md:max-lg:[&>:first-child]:col-span-2 md:max-lg:[&>:first-child]:border-b md:max-lg:[&>:last-child]:border-l max-md:[&>*+*]:border-t">
         <PinTray
-          {...{ pinned, chosen, editions, system }}
+          {...{ chosen, editions, system }}
+          pinned={answer.pinned}
           onUnpinAll={() => {
             setState((before) => ({ ...before, pins: [] }));
             document.querySelector<HTMLElement>('[role="grid"]')?.focus({ preventScroll: true });
           }}
         />
-        <Comparison {...{ pinned, chosen, system }} />
+        <Comparison {...{ chosen, system }} pinned={answer.pinned} />
         <EditionBlock
           {...{ practice, chosen }}
           edition={editions.find(({ table }) => table === chosen?.table)}
         />
       </div>
+    </>
+  );
+}
+
+/** The line of what was found and its rows: apart from the rest of the page, which scrolling leaves alone. */
+function Schedule({
+  system,
+  library,
+  state,
+  setState,
+  answer,
+  found,
+  ...props
+}: SearchProps & { found: ReturnType<typeof useSearch> }) {
+  const [view, setView] = useState({ first: 1, last: 0 });
+  const onView = useCallback((first: number, last: number) => setView({ first, last }), []);
+  const uses = useMemo(() => new Map(props.uses), [props.uses]);
+  return (
+    <>
+      <ResultLine
+        {...{ view, answer, system }}
+        of={library}
+        said={found.said}
+        nearest={found.nearest}
+        onSaid={found.setSaid}
+      />
+      {answer.total === 0 && answer.isSettled ? (
+        <NoSection state={state} onClear={() => setState(({ pins }) => ({ ...EMPTY, pins }))} />
+      ) : (
+        <SectionTable
+          {...{ system, uses, onView }}
+          rows={answer.rows}
+          total={answer.total}
+          query={answer.query}
+          pins={state.pins}
+          at={found.at}
+          onChoose={found.choose}
+          onPin={found.pin}
+          onSort={(name) => setState((before) => withSort(before, name))}
+          onNearEnd={answer.more}
+        />
+      )}
     </>
   );
 }

@@ -1,5 +1,6 @@
 import { flexRender, getCoreRowModel, type Row, useReactTable } from '@tanstack/react-table';
-import { type KeyboardEvent, useEffect, useId, useMemo } from 'react';
+import type { VirtualItem } from '@tanstack/react-virtual';
+import { type KeyboardEvent, memo, useEffect, useId, useMemo } from 'react';
 import { GraduatedRule } from '@/components/drawing/GraduatedRule';
 import type { UnitSystemName } from '@/engine/quantity';
 import { paths } from '@/paths';
@@ -11,18 +12,26 @@ import type { SectionItem } from './section';
 import { useRows } from './use-rows';
 
 export interface SectionTableProps {
+  /** As far as they are read. */
   readonly rows: readonly SectionItem[];
+  readonly total: number;
   readonly query: SectionQuery;
   readonly system: UnitSystemName;
   readonly pins: readonly string[];
-  readonly chosen: string | null;
+  /** Index of the chosen row. */
+  readonly at: number;
   readonly uses: ReadonlyMap<string, number>;
   readonly onChoose: (item: SectionItem) => void;
   readonly onPin: (item: SectionItem) => void;
   readonly onSort: (name: string) => void;
   /** Rows in view, for the line above. */
   readonly onView: (first: number, last: number) => void;
+  /** The rows in view are near the end of those read. */
+  readonly onNearEnd: () => void;
 }
+
+/** So many rows before the end of those read, more are read. */
+const NEAR = 100;
 
 /** What a phone shows of a section beside its name. */
 const PHONE = ['mass', 'w_pl'];
@@ -48,21 +57,23 @@ function moved(key: string, at: number, page: number, rows: number): number | nu
 
 /** Another answer is read from its top; the line above says which rows are in view. */
 function useReport(
-  rows: readonly SectionItem[],
+  { rows, total, query, onView, onNearEnd }: SectionTableProps,
   { first, size, startAt }: ReturnType<typeof useRows>,
-  onView: SectionTableProps['onView'],
 ) {
   // biome-ignore lint/correctness/useExhaustiveDependencies: not when the way to scroll is made anew
-  useEffect(() => startAt(0), [rows]);
+  useEffect(() => startAt(0), [query]);
   const last = Math.min(rows.length, first + size);
   useEffect(() => onView(first + 1, last), [onView, first, last]);
+  const isNearEnd = rows.length < total && last > rows.length - NEAR;
+  useEffect(() => {
+    if (isNearEnd) onNearEnd();
+  }, [isNearEnd, onNearEnd]);
 }
 
-/** The sections that meet the query: only the rows in view are drawn, and the rule beside them is the scroll bar. */
-export function SectionTable(props: SectionTableProps) {
-  const { rows, query, system, chosen, onChoose, onView } = props;
-  const id = useId();
-  const data = useMemo(() => [...rows], [rows]);
+/** The rows that are drawn, as the table's model: the model of a long answer would be made anew with every page. */
+function useDrawnRows(rows: readonly SectionItem[], system: UnitSystemName, drawn: readonly VirtualItem[]) {
+  const [from, to] = [drawn[0]?.index ?? 0, (drawn.at(-1)?.index ?? -1) + 1];
+  const data = useMemo(() => rows.slice(from, to), [rows, from, to]);
   const table = useReactTable({
     data,
     columns: COLUMNS[system],
@@ -70,10 +81,16 @@ export function SectionTable(props: SectionTableProps) {
     manualSorting: true,
     getRowId: keyOf,
   });
-  const view = useRows(rows.length);
-  useReport(rows, view, onView);
+  return table.getRowModel().rows.map((row, i) => ({ row, index: from + i }));
+}
 
-  const at = rows.findIndex((item) => keyOf(item) === chosen);
+/** The sections that meet the query: only the rows in view are drawn, and the rule beside them is the scroll bar. */
+export function SectionTable(props: SectionTableProps) {
+  const { rows, total, query, system, at, pins, uses, onChoose, onPin } = props;
+  const id = useId();
+  const view = useRows(rows.length);
+  useReport(props, view);
+  const drawn = useDrawnRows(rows, system, view.drawn);
   const onKeyDown = (event: KeyboardEvent) => {
     const item = rows[at];
     if (event.key === 'Enter' && item && event.target === event.currentTarget) {
@@ -87,7 +104,6 @@ export function SectionTable(props: SectionTableProps) {
     onChoose(next);
     view.show(to);
   };
-  const all = table.getRowModel().rows;
   return (
     <div className="grid lg:grid-cols-[minmax(0,1fr)_62px]">
       <div ref={view.scroller} className="section-scroll">
@@ -97,21 +113,26 @@ export function SectionTable(props: SectionTableProps) {
           role="grid"
           className="schedule section-table"
           aria-label="Sections"
-          aria-rowcount={rows.length + 1}
-          aria-activedescendant={at >= 0 ? `${id}-${at}` : undefined}
+          aria-rowcount={total + 1}
+          aria-activedescendant={at < rows.length ? `${id}-${at}` : undefined}
           tabIndex={0}
           onKeyDown={onKeyDown}
         >
           <Heads {...props} />
           <tbody>
             <Filler height={view.before} />
-            {view.drawn.map(({ index }) => {
-              const row = all[index];
-              return (
-                row && <SectionRow key={row.id} {...props} id={`${id}-${index}`} row={row} index={index} />
-              );
-            })}
+            {drawn.map(({ row, index }) => (
+              <SectionRow
+                key={row.id}
+                {...{ row, index, system, onChoose, onPin }}
+                id={`${id}-${index}`}
+                pin={pins.indexOf(row.id) + 1}
+                isChosen={index === at}
+                used={uses.get(row.id)}
+              />
+            ))}
             <Filler height={view.after} />
+            {rows.length < total && <Unread rows={total - rows.length} />}
           </tbody>
         </table>
       </div>
@@ -129,6 +150,17 @@ const Filler = ({ height }: { height: number }) =>
     </tr>
   );
 
+const Unread = ({ rows }: { rows: number }) => (
+  <tr data-filler>
+    <td colSpan={COLUMNS_BY_ID.size + 3} className="h-28 px-(--pad)! text-left text-ink-2">
+      … {rows} more are read on the way down
+    </td>
+  </tr>
+);
+
+/** Rows that the rule is graduated by at most; it is a few hundred px high. */
+const GRADUATED = 1000;
+
 type Part = Pick<SectionTableProps, 'rows' | 'query' | 'system'>;
 
 function Rule({
@@ -139,16 +171,18 @@ function Rule({
   controls,
 }: Part & { view: ReturnType<typeof useRows>; controls: string }) {
   const field = query.sort?.field ?? 'mass_kg_m';
-  const column = useMemo(
-    () =>
-      rows.map((item, i) =>
-        field === 'designation' ? i + 1 : toShown(field, measureOf(item, field) ?? 0, system),
-      ),
-    [rows, field, system],
-  );
+  const column = useMemo(() => {
+    const count = Math.min(rows.length, GRADUATED);
+    return Array.from({ length: count }, (_, i) => {
+      const at = count < 2 ? 0 : Math.round((i * (rows.length - 1)) / (count - 1));
+      const item = rows[at];
+      return field === 'designation' || !item ? at + 1 : toShown(field, measureOf(item, field) ?? 0, system);
+    });
+  }, [rows, field, system]);
   if (rows.length === 0) return null;
   return (
     <GraduatedRule
+      rows={rows.length}
       column={column}
       unit={field === 'designation' ? 'row' : unitOf(field, system)}
       first={view.first}
@@ -201,18 +235,34 @@ function Heads({ query, system, onSort }: SectionTableProps) {
   );
 }
 
-interface SectionRowProps extends SectionTableProps {
+interface SectionRowProps extends Pick<SectionTableProps, 'system' | 'onChoose' | 'onPin'> {
   readonly id: string;
   readonly row: Row<SectionItem>;
   readonly index: number;
+  /** Its number among the pinned; 0 where it is not pinned. */
+  readonly pin: number;
+  readonly isChosen: boolean;
+  /** Members that use it. */
+  readonly used: number | undefined;
 }
 
-function SectionRow({ id, row, index, pins, chosen, uses, system, onChoose, onPin }: SectionRowProps) {
+/** The model's rows are made anew with every window, the sections in them are not. */
+const isSameRow = (before: SectionRowProps, now: SectionRowProps): boolean =>
+  before.row.original === now.row.original &&
+  before.index === now.index &&
+  before.pin === now.pin &&
+  before.isChosen === now.isChosen &&
+  before.used === now.used &&
+  before.system === now.system &&
+  before.onChoose === now.onChoose &&
+  before.onPin === now.onPin;
+
+const SectionRow = memo(function SectionRow(props: SectionRowProps) {
+  const { id, row, index, pin, isChosen, used, system, onChoose, onPin } = props;
   const item = row.original;
-  const pin = pins.indexOf(row.id) + 1;
   const name = shownName(item.designation);
   return (
-    <tr id={id} aria-rowindex={index + 2} aria-selected={row.id === chosen} onClick={() => onChoose(item)}>
+    <tr id={id} aria-rowindex={index + 2} aria-selected={isChosen} onClick={() => onChoose(item)}>
       <td>
         <button
           type="button"
@@ -247,7 +297,7 @@ function SectionRow({ id, row, index, pins, chosen, uses, system, onChoose, onPi
           {flexRender(columnDef.cell, getContext())}
         </td>
       ))}
-      <td className="figure text-ink-2">{uses.get(row.id) ?? '–'}</td>
+      <td className="figure text-ink-2">{used ?? '–'}</td>
     </tr>
   );
-}
+}, isSameRow);

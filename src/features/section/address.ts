@@ -63,6 +63,9 @@ export function writeAddress({ bounds, pins, ...words }: PageState): string {
   return search === '' ? '' : `?${search}`;
 }
 
+/** What is asked, pins apart: the query of the list's endpoint too. */
+export const askedOf = (state: PageState): string => writeAddress({ ...state, pins: [] });
+
 export const queryOf = ({ bounds, pins: _, ...words }: PageState): SectionQuery =>
   toSectionQuery({ ...words, ...bounds });
 

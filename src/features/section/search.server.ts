@@ -55,16 +55,17 @@ function rankOf(q: string): SQL<number | null> {
     when ${and(sql`starts_with(${FAMILY}, ${family})`, ...occur)} then 4 end`;
 }
 
-function conditions({ table, shapes, ranges }: SectionQuery): (SQL | undefined)[] {
-  return [
-    table === null ? undefined : eq(section.tableSlug, table),
-    shapes === null ? undefined : inArray(section.shape, [...shapes]),
-    ...ranges.flatMap(({ field, min, max }) => [
-      min === undefined ? undefined : gte(FIELDS[field], min),
-      max === undefined ? undefined : lte(FIELDS[field], max),
-    ]),
-  ];
-}
+export const rangeConditions = ({ ranges }: SectionQuery): SQL[] =>
+  ranges.flatMap(({ field, min, max }) => [
+    ...(min === undefined ? [] : [gte(FIELDS[field], min)]),
+    ...(max === undefined ? [] : [lte(FIELDS[field], max)]),
+  ]);
+
+const conditions = (query: SectionQuery): (SQL | undefined)[] => [
+  query.table === null ? undefined : eq(section.tableSlug, query.table),
+  query.shapes === null ? undefined : inArray(section.shape, [...query.shapes]),
+  ...rangeConditions(query),
+];
 
 const COLUMNS = {
   id: section.id,
@@ -203,8 +204,16 @@ export async function searchRows(
   return nearest(tx, await issuedRows(tx, practiceId, query), query.q, page.limit);
 }
 
+/** What answers a query, as searchRows finds it; of the nearest, all. */
+export async function answering(tx: Tx, practiceId: string, query: SectionQuery): Promise<SQL | undefined> {
+  const issued = await issuedRows(tx, practiceId, query);
+  if (query.q === '') return issued;
+  if (await isCalled(tx, practiceId, query.q)) return and(issued, sql`${rankOf(query.q)} is not null`);
+  return and(issued, inArray(section.id, await nearestIds(tx, issued, query.q)));
+}
+
 /** Of the issued editions, by their ids: of two tables' worth of statistics the planner guesses badly. */
-async function issuedRows(tx: Tx, practiceId: string, query?: SectionQuery): Promise<SQL | undefined> {
+export async function issuedRows(tx: Tx, practiceId: string, query?: SectionQuery): Promise<SQL | undefined> {
   const editions = await tx
     .select({ id: revision.id })
     .from(revision)
@@ -269,8 +278,7 @@ const CANDIDATES = 300;
 /** Letters that a key is compared by. */
 const LONGEST = 40;
 
-/** Nobody is left with nothing for a slip of the finger. */
-async function nearest(tx: Tx, met: SQL | undefined, q: string, limit: number): Promise<Found> {
+async function nearestIds(tx: Tx, met: SQL | undefined, q: string): Promise<string[]> {
   const asked = designationKey(q).slice(0, LONGEST);
   const near = await tx
     .select({ id: section.id, designation: section.designation })
@@ -278,9 +286,12 @@ async function nearest(tx: Tx, met: SQL | undefined, q: string, limit: number): 
     .where(met)
     .orderBy(sql`levenshtein(left(${KEY}, ${LONGEST}), ${asked})`, asc(section.massKgM), FAMILY, SIZES)
     .limit(CANDIDATES);
-  const ids = nearestDesignations(q, near)
-    .slice(0, limit)
-    .map(({ id }) => id);
+  return nearestDesignations(q, near).map(({ id }) => id);
+}
+
+/** Nobody is left with nothing for a slip of the finger. */
+async function nearest(tx: Tx, met: SQL | undefined, q: string, limit: number): Promise<Found> {
+  const ids = (await nearestIds(tx, met, q)).slice(0, limit);
   const rows = ids.length === 0 ? [] : await selectRows(tx, {}).where(and(met, inArray(section.id, ids)));
   const byId = new Map(rows.map((row) => [row.id, toItem(row)]));
   const items = ids.flatMap((id) => byId.get(id) ?? []);

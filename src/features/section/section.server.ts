@@ -4,6 +4,7 @@ import { revision } from '@/db/schema/library';
 import { member } from '@/db/schema/member';
 import { section } from '@/db/schema/section';
 import { withPractice } from '@/db/tenancy';
+import type { UnitSystemName } from '@/engine/quantity';
 import { designationKey } from '@/engine/section';
 import type { User } from '@/features/account/account';
 import { requirePermission } from '@/features/account/permission';
@@ -17,7 +18,9 @@ import { notFound } from '@/lib/app-error';
 import { initialsOf } from '@/lib/initials';
 import { type EditionView, editionDocument, type SectionDetail } from './edition';
 import type { SectionPlace, SectionQuery } from './query';
-import { type Found, searchRows, selectRows, toItem } from './search.server';
+import { type Found, issuedRows, searchRows, selectRows, toItem } from './search.server';
+import type { Spread } from './spread';
+import { spreadRows } from './spread.server';
 
 const SECTION_TABLE = 'section-table';
 
@@ -29,6 +32,24 @@ export function searchSections(
 ): Promise<Found> {
   requirePermission(user, 'library.read');
   return withPractice(user, (tx) => searchRows(tx, user.practiceId, query, page));
+}
+
+/** How many sections the issued editions have. */
+export function countSections(user: User): Promise<number> {
+  requirePermission(user, 'library.read');
+  return withPractice(user, async (tx) => {
+    const [counted] = await tx
+      .select({ total: count() })
+      .from(section)
+      .where(await issuedRows(tx, user.practiceId));
+    return counted?.total ?? 0;
+  });
+}
+
+/** How the depth and mass of what answers a query are spread, in bins round in a unit system. */
+export function spreadSections(user: User, query: SectionQuery, system: UnitSystemName): Promise<Spread> {
+  requirePermission(user, 'library.read');
+  return withPractice(user, (tx) => spreadRows(tx, user.practiceId, query, system));
 }
 
 export interface SectionKey {

@@ -1,5 +1,5 @@
 import { describe, expect, test } from 'vitest';
-import { drawnDepth, fitOrdinates, roundStep, timesDrawn } from './scale';
+import { drawnDepth, fitOrdinates, timesDrawn } from './scale';
 
 describe('fitOrdinates(least, most, top, bottom)', () => {
   test('uses the whole height when the diagram lies on both sides', () => {
@@ -30,8 +30,4 @@ test('timesDrawn(…) has two figures below ten and whole numbers above', () => 
   expect(timesDrawn(4430, 100)).toBe('44');
   expect(timesDrawn(440, 100)).toBe('4.4');
   expect(timesDrawn(0, 100)).toBe('1');
-});
-
-test('roundStep(least) is 1, 2, 2.5 or 5 times a power of ten, never less than asked', () => {
-  expect([0.3, 0.5, 1, 1.2, 2.1, 2.6, 7, 60].map(roundStep)).toEqual([0.5, 0.5, 1, 2, 2.5, 5, 10, 100]);
 });

@@ -1,4 +1,4 @@
-import { roundStep } from '../geometry/scale';
+import { roundStep } from '@/lib/round-step';
 
 type Graduation = { y: number; label: string };
 export type Graduations = { ticks: number[]; marks: Graduation[] };

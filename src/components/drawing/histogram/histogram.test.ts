@@ -1,19 +1,9 @@
 import { describe, expect, test } from 'vitest';
 import { firstRowAt, graduationsOf } from './graduations';
-import { countsOf, countWithin, keyedRange, movedTo, shifted } from './histogram';
+import { keyedRange, movedTo, shifted } from './histogram';
 
 const bins = { from: 100, to: 200, bin: 20 };
 const key = (name: string, shiftKey = false) => ({ key: name, shiftKey });
-
-describe('countsOf(values, bins)', () => {
-  test('puts a value on a boundary into the bin that it starts, and the last into the last bin', () => {
-    expect(countsOf([100, 119.9, 120, 199, 200], bins)).toEqual([2, 1, 0, 0, 2]);
-  });
-
-  test('leaves out what lies outside', () => {
-    expect(countsOf([99, 201], bins)).toEqual([0, 0, 0, 0, 0]);
-  });
-});
 
 describe('the cursors of a range', () => {
   const range = { low: 120, high: 160 };
@@ -40,10 +30,6 @@ describe('the cursors of a range', () => {
     expect(keyedRange(key('Home'), range, 'low', bins, 1)?.low).toBe(100);
     expect(keyedRange(key(']'), range, 'low', bins, 2)).toEqual({ low: 122, high: 162 });
     expect(keyedRange(key('a'), range, 'low', bins, 2)).toBeNull();
-  });
-
-  test('count what lies between them, ends included', () => {
-    expect(countWithin([120, 140, 160, 161], range)).toBe(3);
   });
 });
 

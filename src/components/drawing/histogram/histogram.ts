@@ -1,15 +1,5 @@
-/** Equal bins over from…to; a value at the end falls into the last one, and values outside are left out. */
+/** Equal bins over from…to. */
 export type Bins = { from: number; to: number; bin: number };
-
-export function countsOf(values: readonly number[], { from, to, bin }: Bins): number[] {
-  const counts = new Array<number>(Math.max(1, Math.ceil((to - from) / bin - 1e-9))).fill(0);
-  for (const value of values) {
-    if (value < from || value > to) continue;
-    const i = Math.min(counts.length - 1, Math.floor((value - from) / bin + 1e-9));
-    counts[i] = (counts[i] ?? 0) + 1;
-  }
-  return counts;
-}
 
 export type Range = { low: number; high: number };
 export type Cursor = keyof Range;
@@ -53,6 +43,3 @@ export function keyedRange(
   if (key === ']' || key === '}') return shifted(range, by, bins);
   return null;
 }
-
-export const countWithin = (values: readonly number[], { low, high }: Range): number =>
-  values.filter((value) => value >= low && value <= high).length;

@@ -1,4 +1,4 @@
-import { roundStep } from '../geometry/scale';
+import { roundStep } from '@/lib/round-step';
 
 /** A section as drawn: its true outline in mm, x from the left edge and y down from the top, and the table's own axis letters. */
 export type OutlinedSection = {

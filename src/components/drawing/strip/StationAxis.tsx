@@ -1,6 +1,6 @@
 import { memo } from 'react';
+import { roundStep } from '@/lib/round-step';
 import type { DrawingFormat } from '../format';
-import { roundStep } from '../geometry/scale';
 import { type Frame, xOf } from './frame';
 
 /** Stations of whole units, as many as leave `room` px between them. */

@@ -1,9 +1,9 @@
 import type { Beam } from '@/engine/model/index';
 import type { Piecewise } from '@/engine/polynomial/index';
+import { roundStep } from '@/lib/round-step';
 import type { AskedStation } from '../asked';
 import type { DrawingFormat } from '../format';
 import { valuesAt } from '../geometry/curve';
-import { roundStep } from '../geometry/scale';
 import { type Quantity, toScreen } from '../signs';
 import { PURPOSE } from './diagram-layout';
 

@@ -12,7 +12,7 @@ export const RANGED_FIELD = { depth: 'depth_mm', mass: 'mass_kg_m' } as const;
 const counts = z.array(z.int().nonnegative()).max(64);
 
 /** How a measure is spread over bins that start at 0. A value on a boundary is in the bin that it starts. */
-export const measureSpreadSchema = z.strictObject({
+const measureSpreadSchema = z.strictObject({
   /** Width of a bin, in mm or kg/m. */
   bin: z.number().positive(),
   /** The sections that answer all but the ranges, and those of them that meet every range. */

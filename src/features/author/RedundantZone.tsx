@@ -1,14 +1,13 @@
 import { useMemo } from 'react';
 import { Button } from '@/components/ui/Button';
-import { supportLetter } from '@/engine/model';
 import { useRestedValue } from '@/features/template/use-live';
-import { choicesOf } from './choices';
 import { type Pointer, textAt } from './edit';
 import { ChoiceAt, ExpressionAt, useReadOnly } from './fields';
 import { sameValue } from './merge';
 import { Row } from './Part';
 import { PartList } from './PartList';
 import { releasable, type WrittenRedundant } from './redundants';
+import { SupportAt } from './SupportAt';
 import { useDraft, useListAt, useSnapshot, useTextAt } from './use-editor';
 
 const LIST = '/beam/redundants';
@@ -89,7 +88,6 @@ function Eligible({ degree, eligible, usual }: EligibleProps) {
 }
 
 function RedundantFields({ at }: { readonly at: Pointer }) {
-  const supports = useListAt('/beam/supports');
   const component = useTextAt(`${at}/component`);
   return (
     <Row>
@@ -97,11 +95,7 @@ function RedundantFields({ at }: { readonly at: Pointer }) {
         <ExpressionAt at={`${at}/at`} label="Over the support at" wanted="length" />
       ) : (
         <>
-          <ChoiceAt
-            at={`${at}/support`}
-            label="Support"
-            choices={choicesOf(supports.map((_, index) => supportLetter(index)))}
-          />
+          <SupportAt at={`${at}/support`} />
           <ChoiceAt
             at={`${at}/component`}
             label="Component"

@@ -1,12 +1,12 @@
 import { ChoiceField } from '@/components/ui/Field';
-import { supportLetter } from '@/engine/model';
 import { DIMENSION_NAMES, DIMENSION_WORDS } from '@/engine/quantity';
 import { choicesOf } from './choices';
 import type { Pointer } from './edit';
 import { ChoiceAt, CountAt, ExpressionAt, useReadOnly } from './fields';
 import { Row } from './Part';
+import { SupportAt } from './SupportAt';
 import { beginningOf, QUANTITY_NAMES, quantityName } from './selectors';
-import { useAt, useDraft, useListAt } from './use-editor';
+import { useAt, useDraft } from './use-editor';
 import { SceneContext } from './use-kinds';
 
 const SIDES = [
@@ -37,16 +37,11 @@ export function SelectorFields({ at }: { readonly at: Pointer }) {
 }
 
 function Details({ at, name }: { readonly at: Pointer; readonly name: ReturnType<typeof quantityName> }) {
-  const supports = useListAt('/beam/supports');
   switch (name) {
     case 'reaction':
       return (
         <>
-          <ChoiceAt
-            at={`${at}/reaction`}
-            label="Support"
-            choices={choicesOf(supports.map((_, index) => supportLetter(index)))}
-          />
+          <SupportAt at={`${at}/reaction`} />
           <ChoiceAt
             at={`${at}/component`}
             label="Component"

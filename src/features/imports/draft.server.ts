@@ -2,11 +2,9 @@ import { and, eq, sql } from 'drizzle-orm';
 import type { Tx } from '@/db/client';
 import { revision } from '@/db/schema/library';
 import { section } from '@/db/schema/section';
-import { ENGINE_VERSION } from '@/engine/version';
 import { requireRevisionById } from '@/features/review/rows.server';
-import { storedRowsHash } from '@/features/section/edition.server';
+import { sayEdition, storedRowsHash } from '@/features/section/edition.server';
 import type { SectionTableMeta } from '@/features/section/section';
-import { fingerprint } from '@/lib/fingerprint';
 import { About } from './imports';
 import type { ImportRow } from './rows.server';
 
@@ -61,12 +59,5 @@ export async function finishDraft(tx: Tx, row: ImportRow & { readonly revisionId
     import: { id: row.id, file: row.fileName, sha256: row.sha256 },
     ...(row.sourceName && { source_document: { file: row.sourceName, sha256: row.sourceSha256 } }),
   };
-  const sha256 = fingerprint(body, ENGINE_VERSION);
-  await tx
-    .update(revision)
-    .set({ body, sha256, engineVersion: ENGINE_VERSION, version: draft.version + 1 })
-    .where(
-      and(eq(revision.practiceId, practiceId), eq(revision.id, revisionId), eq(revision.state, 'draft')),
-    );
-  return sha256;
+  return sayEdition(tx, draft, body);
 }

@@ -2,7 +2,11 @@ import { createHash } from 'node:crypto';
 import canonicalize from 'canonicalize';
 import { and, asc, eq, gt, sql } from 'drizzle-orm';
 import type { Tx } from '@/db/client';
+import { revision } from '@/db/schema/library';
 import { section } from '@/db/schema/section';
+import { ENGINE_VERSION } from '@/engine/version';
+import type { RevisionRow } from '@/features/review/rows.server';
+import { fingerprint } from '@/lib/fingerprint';
 import type { SectionRow, SectionTableMeta } from './section';
 
 /** An edition's document: where the table comes from, and its rows by their hash, since they are rows of their own. */
@@ -113,3 +117,18 @@ export const copyRows = (tx: Tx, practiceId: string, from: string, to: string) =
     insert into section (practice_id, revision_id, ${sql.raw(COPIED)})
     select practice_id, ${to}::uuid, ${sql.raw(COPIED)} from section
     where practice_id = ${practiceId} and revision_id = ${from}`);
+
+/** Says what a draft edition is, now that its rows are there; answers with its fingerprint. */
+export async function sayEdition(
+  tx: Tx,
+  { practiceId, id, version }: RevisionRow,
+  body: object,
+  more: { readonly editorIds?: string[]; readonly changeNote?: string } = {},
+): Promise<string> {
+  const sha256 = fingerprint(body, ENGINE_VERSION);
+  await tx
+    .update(revision)
+    .set({ ...more, body, sha256, engineVersion: ENGINE_VERSION, version: version + 1 })
+    .where(and(eq(revision.practiceId, practiceId), eq(revision.id, id), eq(revision.state, 'draft')));
+  return sha256;
+}

@@ -3,7 +3,6 @@ import type { Tx } from '@/db/client';
 import { document, revision } from '@/db/schema/library';
 import { section } from '@/db/schema/section';
 import { withPractice } from '@/db/tenancy';
-import { ENGINE_VERSION } from '@/engine/version';
 import type { User } from '@/features/account/account';
 import { requirePermission } from '@/features/account/permission';
 import { recordAudit } from '@/features/audit/audit.server';
@@ -11,9 +10,8 @@ import { findRevision } from '@/features/review/library.server';
 import { createDraft } from '@/features/review/review.server';
 import { type Actor, requireRevisionById, selectRevisions } from '@/features/review/rows.server';
 import { AppError, invalid } from '@/lib/app-error';
-import { fingerprint } from '@/lib/fingerprint';
 import { type ChosenSection, chooseSection } from './choose.server';
-import { copyRows, fillEdition, storedRowsHash } from './edition.server';
+import { copyRows, fillEdition, sayEdition, storedRowsHash } from './edition.server';
 import type { SectionRow, SectionTableMeta } from './section';
 
 /** The one table of the sections that a practice makes itself; it lives as the tables of suppliers do. */
@@ -117,24 +115,15 @@ async function sayRows(tx: Tx, actor: Actor, revisionId: string, added: string):
   const before = Object(draft.body) as { notes?: readonly string[] };
   const body = { ...before, notes: [...(before.notes ?? []), added], rows: count, rows_sha256: rowsHash };
   const isEditor = personId === draft.authorId || draft.editorIds.includes(personId);
-  await tx
-    .update(revision)
-    .set({
-      body,
-      sha256: fingerprint(body, ENGINE_VERSION),
-      engineVersion: ENGINE_VERSION,
-      version: draft.version + 1,
-      editorIds: isEditor ? draft.editorIds : [...draft.editorIds, personId],
-      changeNote: [draft.changeNote, `Added ${added}`].filter((line) => line !== '').join('\n'),
-    })
-    .where(
-      and(eq(revision.practiceId, practiceId), eq(revision.id, revisionId), eq(revision.state, 'draft')),
-    );
+  const sha256 = await sayEdition(tx, draft, body, {
+    editorIds: isEditor ? draft.editorIds : [...draft.editorIds, personId],
+    changeNote: [draft.changeNote, `Added ${added}`].filter((line) => line !== '').join('\n'),
+  });
   await recordAudit(tx, actor, {
     action: 'revision.save',
     subjectKind: 'revision',
     subjectId: revisionId,
     before: { sha256: draft.sha256 },
-    after: { sha256: fingerprint(body, ENGINE_VERSION), added },
+    after: { sha256, added },
   });
 }

@@ -3,7 +3,7 @@ import { textWidth } from '@/components/drawing/geometry/text-width';
 import { ticksPath } from '@/components/drawing/marks/paths';
 import { formatQuantity } from '@/engine/quantity';
 import { AT_A_PLACE, isNew, type LengthTool, newPlaceAt, type PlaceTool, type Target, wholeOf } from './add';
-import { type Bay, bayAt, baysOf, type Place, placesOf, snapped } from './places';
+import { type Bay, bayAt, drawnBays, type Place, placesOf, snapped } from './places';
 import type { Sketch } from './sketch';
 import type { StageLayout } from './stage-layout';
 
@@ -85,7 +85,7 @@ export function LengthPicker(props: PlacingProps & { readonly onPlace: (bay: Bay
   const over = (x: number): Bay | null => {
     const end = nearest(x);
     const from = begun.current;
-    if (!from || !end || Math.abs(end.x - from.x) < REACH * perPx) return bayAt(baysOf(sketch), x) ?? null;
+    if (!from || !end || Math.abs(end.x - from.x) < REACH * perPx) return bayAt(drawnBays(sketch), x) ?? null;
     return end.x < from.x ? { from: end, to: from } : { from, to: end };
   };
   const onKey = (event: KeyboardEvent): boolean => {
@@ -124,7 +124,7 @@ const closest = (places: readonly Place[], x: number): Place | null =>
 
 /** Each part of the beam between supports, and the whole. */
 function choices(sketch: Sketch): Bay[] {
-  const bays = baysOf(sketch);
+  const bays = drawnBays(sketch);
   const whole = wholeOf(sketch);
   return bays.length > 1 && whole ? [...bays, whole] : bays;
 }

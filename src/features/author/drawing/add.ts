@@ -8,7 +8,7 @@ import { listAt, type Pointer, textAt } from '../edit';
 import { COUPLE, CURVATURE, type NewParameter, PLACE, POINT, TRIANGULAR, UNIFORM } from '../entries';
 import { changing } from './beam-reading';
 import { relettered } from './letters';
-import { type Bay, bayAt, baysOf, type Place } from './places';
+import { type Bay, bayAt, drawnBays, type Place } from './places';
 import type { Sketch } from './sketch';
 
 export const AT_A_PLACE = ['pin', 'roller', 'fixed', 'guided', 'spring', 'hinge', 'point', 'couple'] as const;
@@ -155,14 +155,14 @@ function addSegment(steps: DraftSteps, sketch: Sketch, { from, to }: Bay): Point
 
 /** The whole of the beam as a length to put something over. */
 export function wholeOf(sketch: Sketch): Bay | undefined {
-  const bays = baysOf(sketch);
+  const bays = drawnBays(sketch);
   const [first, last] = [bays[0], bays.at(-1)];
   return first && last && { from: first.from, to: last.to };
 }
 
 /** Where the pointer is, as a place of its own: to the step that a person would type. */
 export function newPlaceAt(sketch: Sketch, x: number, step: number): NewPlace | null {
-  const bay = bayAt(baysOf(sketch), x);
+  const bay = bayAt(drawnBays(sketch), x);
   if (!bay) return null;
   const offset = Math.round((x - bay.from.x) / step) * step;
   return { bay, offset: Number(offset.toFixed(6)) };

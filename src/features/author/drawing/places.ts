@@ -47,7 +47,7 @@ export function placesOf(sketch: Sketch): Place[] {
 }
 
 /** The lengths between supports and ends, from the left. */
-export function baysOf(sketch: Sketch): Bay[] {
+export function drawnBays(sketch: Sketch): Bay[] {
   const ends = bayEnds(sketch);
   return ends.slice(1).map((to, index) => ({ from: ends[index] ?? to, to }));
 }

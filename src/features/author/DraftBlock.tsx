@@ -4,6 +4,8 @@ import { Button } from '@/components/ui/Button';
 import { FieldNote } from '@/components/ui/Field';
 import { TitleBlock } from '@/components/ui/TitleBlock';
 import { TitleStrip } from '@/components/ui/TitleStrip';
+import { KIND_LABELS } from '@/features/desk/words';
+import { KIND_NAMES } from '@/features/review/review';
 import { paths } from '@/paths';
 import { type Answer, askProof, bundleAddress, layAside, submitDraft } from './author.api';
 import type { Autosave } from './autosave.api';
@@ -27,7 +29,7 @@ function useSteps({ data, autosave }: BlockProps) {
   const [said, setSaid] = useState<string>();
   const [isBusy, setBusy] = useState(false);
   const version = useSnapshot((snapshot) => snapshot.version);
-  const { slug, revision } = data.draft;
+  const { kind, slug, revision } = data.draft;
   const take = async (act: () => Promise<Answer<unknown>>, to: string) => {
     if (isBusy) return;
     setBusy(true);
@@ -38,15 +40,15 @@ function useSteps({ data, autosave }: BlockProps) {
     if (outcome.kind === 'done') location.assign(to);
     else setSaid([...new Set([outcome.message, ...outcome.faults.map(({ message }) => message)])].join(' '));
   };
-  const of = { slug, revision };
-  const review = paths.review('template', slug, revision);
+  const of = { kind, slug, revision };
+  const review = paths.review(kind, slug, revision);
   return {
     said,
     isBusy,
     version,
     prove: () => void take(() => askProof(of), `${review}#proof`),
     submit: (now: () => number) => void take(() => submitDraft(of, now()), `${review}?done=submit`),
-    layAside: () => void take(() => layAside(of), paths.libraryDocument('template', slug)),
+    layAside: () => void take(() => layAside(of), paths.libraryDocument(kind, slug)),
   };
 }
 
@@ -68,7 +70,8 @@ export function DraftBlock(props: BlockProps & { readonly versionNow: () => numb
   const reference = useTextAt('/reference');
   const hindrance = useHindrance();
   const faults = useSnapshot((snapshot) => snapshot.faults.length);
-  const review = paths.review('template', draft.slug, draft.revision);
+  const review = paths.review(draft.kind, draft.slug, draft.revision);
+  const isProven = draft.kind === 'template';
   const submit: BlockAction = {
     label: steps.isBusy ? 'One moment' : 'Send to review',
     reason: hindrance,
@@ -84,7 +87,7 @@ export function DraftBlock(props: BlockProps & { readonly versionNow: () => numb
       <MoreActions {...props} onLayAside={steps.layAside} />
       <TitleBlock
         org={data.practice}
-        orgNote="Template"
+        orgNote={KIND_LABELS[draft.kind]}
         kind="Title"
         title={name || draft.slug}
         by={draft.author}
@@ -92,7 +95,10 @@ export function DraftBlock(props: BlockProps & { readonly versionNow: () => numb
         reference={reference}
         revision={String(draft.revision)}
         action={data.isEditable ? submit : undefined}
-        others={[...(data.isEditable ? [prove] : []), { label: 'Proof, comments', href: review }]}
+        others={[
+          ...(data.isEditable && isProven ? [prove] : []),
+          { label: isProven ? 'Proof, comments' : 'Changes, comments', href: review },
+        ]}
       >
         {steps.said !== undefined && (
           <div className="col-span-6">
@@ -101,7 +107,7 @@ export function DraftBlock(props: BlockProps & { readonly versionNow: () => numb
         )}
       </TitleBlock>
       <TitleStrip
-        kind="Draft of a template"
+        kind={`Draft of a ${KIND_NAMES[draft.kind]}`}
         title={name || draft.slug}
         status="draft"
         reference={reference}
@@ -116,7 +122,7 @@ function MoreActions({ data, onLayAside }: BlockProps & { readonly onLayAside: (
   const { draft, isEditable } = data;
   const faults = useSnapshot((snapshot) => snapshot.faults.length);
   const [isAsked, setAsked] = useState(false);
-  const text = paths.libraryDraftText('template', draft.slug, draft.revision);
+  const text = paths.libraryDraftText(draft.kind, draft.slug, draft.revision);
   return (
     <section className="zone">
       <div className="flex flex-wrap gap-8">
@@ -125,7 +131,7 @@ function MoreActions({ data, onLayAside }: BlockProps & { readonly onLayAside: (
         </Button>
         <Button
           size="small"
-          href={faults === 0 ? bundleAddress({ slug: draft.slug, revision: draft.revision }) : undefined}
+          href={faults === 0 ? bundleAddress(draft) : undefined}
           reason={faults === 0 ? undefined : 'When its faults are put right.'}
         >
           Download the bundle

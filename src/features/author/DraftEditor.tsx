@@ -1,11 +1,10 @@
 import { type ComponentType, memo, useDeferredValue, useEffect, useRef, useState } from 'react';
-import { takesTyping } from '@/components/ui/keys';
 import { ZoneHeading } from '@/components/ui/ZoneHeading';
 import { paths } from '@/paths';
 import { type Autosave, startAutosave } from './autosave.api';
 import { BeamZone } from './BeamZone';
 import { ChangeZone } from './ChangeZone';
-import { startCheck } from './check.api';
+import { startCheck, templateChecker } from './check.api';
 import { DerivedZone } from './DerivedZone';
 import { DraftBlock } from './DraftBlock';
 import { DraftDrawing } from './drawing/DraftDrawing';
@@ -24,13 +23,14 @@ import { DraftStore } from './store';
 import { TitleZone } from './TitleZone';
 import { UndoButtons } from './UndoButtons';
 import { DraftContext, useEditor } from './use-editor';
+import { useUndoKeys } from './use-undo-keys';
 
 /** A template's draft: its drawing and its form, saved while it is written. */
 export function DraftEditor({ data }: { readonly data: DraftPageData }) {
   const [store] = useState(() => new DraftStore(data.draft, !data.isEditable));
   const saver = useRef<Autosave | null>(null);
   useEffect(() => {
-    const stopCheck = startCheck(store);
+    const stopCheck = startCheck(store, templateChecker());
     const autosave = data.isEditable ? startAutosave(store, data.draft) : null;
     saver.current = autosave;
     return () => {
@@ -106,23 +106,4 @@ const Drawing = memo(DraftDrawing);
 function DrawingZone({ data }: { readonly data: DraftPageData }) {
   const editor = useDeferredValue(useEditor());
   return <Drawing editor={editor} system={data.system} />;
-}
-
-/** Ctrl-Z and Ctrl-Shift-Z take back and do again, in a field too: the draft's history knows what was typed there. */
-function useUndoKeys(store: DraftStore): void {
-  useEffect(() => {
-    const onKey = (event: KeyboardEvent) => {
-      const key = event.key.toLowerCase();
-      if (!(event.ctrlKey || event.metaKey) || event.altKey || (key !== 'z' && key !== 'y')) return;
-      const { target } = event;
-      // A field that is no part of the draft keeps its own.
-      const isOther = target instanceof HTMLElement && takesTyping(target) && !target.closest('[data-at]');
-      if (isOther || document.querySelector('dialog[open]')) return;
-      event.preventDefault();
-      if (key === 'y' || event.shiftKey) store.redo();
-      else store.undo();
-    };
-    document.addEventListener('keydown', onKey);
-    return () => document.removeEventListener('keydown', onKey);
-  }, [store]);
 }

@@ -1,13 +1,14 @@
 import { keysOf, type Pointer } from './edit';
-import { placeWords } from './place-words';
 import { useDraft, useSnapshot } from './use-editor';
 
+const NONE = 'None. The draft can be proven and sent to review.';
+
 /** What keeps the draft from review, each a way to its field. */
-export function FaultZone() {
+export function FaultZone({ none = NONE }: { readonly none?: string }) {
   const store = useDraft();
   const faults = useSnapshot((snapshot) => snapshot.faults);
   const document = useSnapshot(({ history }) => history.document);
-  if (faults.length === 0) return <p>None. The draft can be proven and sent to review.</p>;
+  if (faults.length === 0) return <p>{none}</p>;
   const go = (pointer: Pointer) => {
     if (keysOf(pointer).some((key) => /^\d+$/.test(key))) store.select(pointer);
     focusAt(pointer);
@@ -21,7 +22,7 @@ export function FaultZone() {
             className="link min-h-26 text-left pointer-coarse:min-h-44"
             onClick={() => go(pointer)}
           >
-            {placeWords(document, pointer)}
+            {store.placeWords(document, pointer)}
           </button>
           <span className="block text-schedule">{message}</span>
         </li>

@@ -73,7 +73,7 @@ function WorstCase({ slug, revision }: ProofZoneProps) {
   const press = useAdd();
   const [said, setSaid] = useState<string>();
   const add = async () => {
-    const outcome = await readProof({ slug, revision });
+    const outcome = await readProof({ kind: 'template', slug, revision });
     const worst = outcome.kind === 'done' ? outcome.value.report?.worst_case : null;
     if (!worst) return setSaid('There is no worst case: prove the draft first.');
     setSaid(undefined);

@@ -1,7 +1,7 @@
 import { Button } from '@/components/ui/Button';
 import { Notice } from '@/components/ui/Notice';
 import type { Autosave } from './autosave.api';
-import { placeWords } from './place-words';
+import type { DraftStore } from './store';
 import { useDraft, useSnapshot } from './use-editor';
 
 const TIME = new Intl.DateTimeFormat('en-GB', { timeStyle: 'short' });
@@ -78,7 +78,7 @@ function Conflicts() {
       <p>Everything else of both is in. Choose for each; then it is saved.</p>
       <ul aria-label="Changed by both" className="mt-6 grid gap-10">
         {conflicts.map((conflict) => {
-          const place = wordsAt(store.document, conflict.at);
+          const place = wordsAt(store, conflict.at);
           return (
             <li key={conflict.at} className="grid gap-6 border-t border-rule-strong pt-6">
               <b className="font-semibold">{place}</b>
@@ -110,8 +110,8 @@ const CHANGE_WORDS: Readonly<Record<string, string>> = {
   '/consequence': 'What is at stake',
 };
 
-const wordsAt = (document: Parameters<typeof placeWords>[0], at: string): string =>
-  CHANGE_WORDS[at] ?? placeWords(document, at.replace(/^\/document/, ''));
+const wordsAt = (store: DraftStore, at: string): string =>
+  CHANGE_WORDS[at] ?? store.placeWords(store.document, at.replace(/^\/document/, ''));
 
 interface VersionProps {
   readonly title: string;

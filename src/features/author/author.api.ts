@@ -1,6 +1,7 @@
 import { z } from 'zod';
 import { ProofView } from '@/features/proof/proof';
 import { DraftView, type SaveDraft } from '@/features/review/draft';
+import type { DocumentKind } from '@/features/review/review';
 import type { Fault } from '@/lib/app-error';
 import { paths } from '@/paths';
 
@@ -27,13 +28,14 @@ const SESSION_ENDED =
   'The session has ended. Sign in in another tab, then go on here; nothing typed is lost.';
 
 interface DraftAddress {
+  readonly kind: DocumentKind;
   readonly slug: string;
   readonly revision: number;
 }
 
-const addressOf = ({ slug, revision }: DraftAddress): string => paths.api.draft('template', slug, revision);
-const revisionOf = ({ slug, revision }: DraftAddress): string =>
-  paths.api.revision('template', slug, revision);
+const addressOf = ({ kind, slug, revision }: DraftAddress): string => paths.api.draft(kind, slug, revision);
+const revisionOf = ({ kind, slug, revision }: DraftAddress): string =>
+  paths.api.revision(kind, slug, revision);
 
 /** Saves over the version that was read. `keepalive` lets the request outlive the page. */
 export async function putDraft(

@@ -54,7 +54,7 @@ class Saver {
     this.base = contentOf(draft);
     this.sent = this.base;
     this.parted = this.base;
-    this.key = `draft ${draft.slug} ${draft.revision}`;
+    this.key = `draft ${draft.kind} ${draft.slug} ${draft.revision}`;
   }
 
   /** Takes up what an earlier visit of this tab could not save. */

@@ -5,6 +5,7 @@ import { type Content, contentOf } from './content';
 import { applyEdits, type Edit, type Pointer, type StatedValues, valueAt } from './edit';
 import { edited, type History, newHistory, redone, undone } from './history';
 import { type Conflict, decide } from './merge';
+import { placeWords as templateWords } from './place-words';
 
 type Saving =
   /** `at` is null until something was saved from this page. */
@@ -36,7 +37,12 @@ export class DraftStore {
   private readonly listeners = new Set<() => void>();
   snapshot: Snapshot;
 
-  constructor(draft: DraftView, readOnly: boolean) {
+  /** `placeWords` says a place of the document in the words of its form. */
+  constructor(
+    draft: DraftView,
+    readOnly: boolean,
+    readonly placeWords: (document: Written, at: Pointer) => string = templateWords,
+  ) {
     const { document, ...change } = contentOf(draft);
     this.snapshot = {
       history: newHistory(document),

@@ -20,6 +20,7 @@ const TABLE: Record<Action, [subject: Subject, allowed: string]> = {
   'library.confirm': [{}, 'librarian'],
   'library.set-review': [{}, 'librarian'],
   'library.import': [{}, 'librarian'],
+  'stock.edit': [{}, 'librarian'],
   'library.trace': [{}, 'librarian principal'],
   'recall.decide': [OPEN, 'engineer principal'],
   'recall.close': [{}, 'librarian principal'],

@@ -80,6 +80,7 @@ const RULES = {
     grant(['librarian']),
   ),
   'library.import': rule('Section tables are imported by a librarian.', grant(['librarian'])),
+  'stock.edit': rule('Stock lists are kept by a librarian.', grant(['librarian'])),
   'library.set-review': rule('Review dates are set by a librarian.', grant(['librarian'])),
   'library.trace': rule(
     'Uses in jobs for named people are listed for a librarian or a principal.',

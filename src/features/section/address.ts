@@ -16,12 +16,25 @@ export interface PageState {
   readonly table: string;
   readonly shape: string;
   readonly sort: string;
+  /** '1': only what a supplier holds. */
+  readonly stock: string;
+  /** The address of a stock list; empty for anybody's. */
+  readonly supplier: string;
   readonly bounds: Readonly<Partial<Record<Bound, number>>>;
   /** Keys of the pinned sections, first pinned first. */
   readonly pins: readonly string[];
 }
 
-export const EMPTY: PageState = { q: '', table: '', shape: '', sort: '', bounds: {}, pins: [] };
+export const EMPTY: PageState = {
+  q: '',
+  table: '',
+  shape: '',
+  sort: '',
+  stock: '',
+  supplier: '',
+  bounds: {},
+  pins: [],
+};
 export const MOST_PINS = 4;
 
 export const keyOf = ({ table, designation }: Pick<SectionItem, 'table' | 'designation'>): string =>
@@ -48,6 +61,8 @@ export function readAddress(search: string): PageState {
     table: read('table', sectionQueryFields.table) ?? '',
     shape: read('shape', sectionQueryFields.shape) ?? '',
     sort: read('sort', sectionQueryFields.sort) ?? '',
+    stock: read('stock', sectionQueryFields.stock) ?? '',
+    supplier: read('supplier', sectionQueryFields.supplier) ?? '',
     bounds: Object.fromEntries(bounds),
     pins: [...new Set(given.getAll('pin'))].slice(0, MOST_PINS),
   };

@@ -93,6 +93,10 @@ export const sectionQueryFields = {
     z.enum(Object.keys(SHAPE_NAMES)).optional(),
   ),
   sort: z.preprocess(emptyIsNone, z.enum(SORTS.flatMap((name) => [name, `-${name}`])).optional()),
+  /** 1: only what a supplier holds. */
+  stock: z.preprocess(emptyIsNone, z.literal('1').optional()),
+  /** The address of a stock list: only what it holds. */
+  supplier: word(100),
 };
 
 /** Where a page of a list ended: grade and value of the sort (null: it has none), key and table. */
@@ -105,6 +109,9 @@ export type SectionQuery = {
   table: string | null;
   shapes: readonly SectionShape[] | null;
   ranges: readonly SectionRange[];
+  inStock: boolean;
+  /** Whose stock; null for anybody's. */
+  supplier: string | null;
   /** Null: best answer to q first, then the lightest. */
   sort: { field: SectionField | 'designation'; descending: boolean } | null;
 };
@@ -131,6 +138,8 @@ export function toSectionQuery(fields: Readonly<Record<string, unknown>>): Secti
     table: text('table'),
     shapes: SHAPE_NAMES[text('shape') ?? ''] ?? null,
     ranges,
+    inStock: text('stock') !== null || text('supplier') !== null,
+    supplier: text('supplier'),
     sort: readSort(text('sort')),
   };
 }
@@ -142,12 +151,16 @@ function readSort(text: string | null): SectionQuery['sort'] {
   return { field: measure ? SECTION_MEASURES[measure] : 'designation', descending: text.startsWith('-') };
 }
 
-type Searchable = Measured & Pick<SectionItem, 'designation' | 'shape' | 'table'>;
+type Searchable = Measured & Pick<SectionItem, 'designation' | 'shape' | 'table' | 'stock'>;
+
+const isStocked = ({ stock = [] }: Pick<SectionItem, 'stock'>, supplier: string | null): boolean =>
+  stock.some((held) => supplier === null || held.supplier === supplier);
 
 /** Ranges are inclusive; a value that a table does not give meets none. */
 export function meetsQuery(item: Searchable, query: SectionQuery): boolean {
   if (query.table !== null && item.table !== query.table) return false;
   if (query.shapes !== null && !query.shapes.includes(item.shape)) return false;
+  if (query.inStock && !isStocked(item, query.supplier)) return false;
   return query.ranges.every(({ field, min, max }) => {
     const value = measureOf(item, field);
     return (

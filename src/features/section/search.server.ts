@@ -3,6 +3,7 @@ import type { Tx } from '@/db/client';
 import { document, revision } from '@/db/schema/library';
 import { section } from '@/db/schema/section';
 import { designationKey, designationParts } from '@/engine/section';
+import { isStocked } from '@/features/stock/of-sections.server';
 import {
   LIGHTEST,
   nearestDesignations,
@@ -64,6 +65,7 @@ export const rangeConditions = ({ ranges }: SectionQuery): SQL[] =>
 const conditions = (query: SectionQuery): (SQL | undefined)[] => [
   query.table === null ? undefined : eq(section.tableSlug, query.table),
   query.shapes === null ? undefined : inArray(section.shape, [...query.shapes]),
+  query.inStock ? isStocked(query.supplier) : undefined,
   ...rangeConditions(query),
 ];
 

@@ -14,6 +14,7 @@ import {
   historyOf,
   type LibraryRevision,
 } from '@/features/review/library.server';
+import { withStock } from '@/features/stock/of-sections.server';
 import { notFound } from '@/lib/app-error';
 import { initialsOf } from '@/lib/initials';
 import { type EditionView, editionDocument, type SectionDetail } from './edition';
@@ -31,7 +32,10 @@ export function searchSections(
   page: { readonly place: SectionPlace | null; readonly limit: number },
 ): Promise<Found> {
   requirePermission(user, 'library.read');
-  return withPractice(user, (tx) => searchRows(tx, user.practiceId, query, page));
+  return withPractice(user, async (tx) => {
+    const found = await searchRows(tx, user.practiceId, query, page);
+    return { ...found, items: await withStock(tx, user.practiceId, found.items) };
+  });
 }
 
 /** How many sections the issued editions have. */

@@ -1,5 +1,6 @@
 import { z } from 'zod';
 import { depthOf, SECTION_SHAPES, type SectionDimensions, TUBE_STANDARDS, widthOf } from '@/engine/section';
+import { sectionStockSchema } from '@/features/stock/stock';
 import type { SectionValues } from './resolve';
 
 const length = z.number().positive();
@@ -100,6 +101,8 @@ export const sectionItemSchema = sectionRowSchema
     dimensions_mm: z.record(z.string(), z.number()),
     /** Where lengths by symbol do not describe it: in m, m², m³, m⁴ and m⁶. */
     dimensions_si: sectionDimensionsSchema.optional(),
+    /** Who holds it; left out where nobody does. */
+    stock: z.array(sectionStockSchema).optional(),
   });
 export type SectionItem = z.infer<typeof sectionItemSchema>;
 

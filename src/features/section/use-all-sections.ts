@@ -39,10 +39,10 @@ const NONE: readonly SectionItem[] = [];
 
 /** Rows of the answer, and of the same answer without its ranges. */
 function useRowsOf(items: readonly SectionItem[], query: SectionQuery) {
-  const { q, table, shapes, sort } = query;
+  const { q, table, shapes, inStock, supplier, sort } = query;
   const base = useMemo(
-    () => selectSections(items, { q, table, shapes, sort, ranges: [] }),
-    [items, q, table, shapes, sort],
+    () => selectSections(items, { q, table, shapes, inStock, supplier, sort, ranges: [] }),
+    [items, q, table, shapes, inStock, supplier, sort],
   );
   const rows = useMemo(() => base.filter((item) => meetsQuery(item, query)), [base, query]);
   return { base, rows };

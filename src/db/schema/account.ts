@@ -49,6 +49,8 @@ export const person = pgTable(
     name: text().notNull(),
     initials: text().notNull(),
     unitSystem: text({ enum: UNIT_SYSTEM_NAMES }).notNull().default('metric'),
+    /** Measures that her schedules of sections show, in their order; null: the usual ones. */
+    sectionColumns: text().array(),
     createdAt: now(),
   },
   (table) => [

@@ -1,0 +1,200 @@
+import Papa from 'papaparse';
+import { unitFactor } from '@/engine/quantity';
+import { cellText } from '@/features/section/import/cells';
+import type { Delimiter, Encoding, Refusal } from '@/features/section/import/contract';
+import { encodingOf, refusalOf } from '@/features/section/import/encoding';
+import { type FileLine, LineReader } from '@/features/section/import/stream';
+import { lengthMarkOf, type ReadAs, readHolding, type StockField, type StockTexts } from './cells';
+import type { Holding } from './stock';
+
+export const MOST_BYTES = 5_000_000;
+export const MOST_LINES = 20_000;
+const MOST_COLUMNS = 250;
+const HEADING_LINES = 10; // a title may stand above the headings
+
+export interface StockRow {
+  /** In the file, from 1. */
+  readonly line: number;
+  readonly texts: StockTexts;
+}
+
+export interface StockFile {
+  readonly rows: readonly StockRow[];
+  readonly as: ReadAs;
+  readonly delimiter: Delimiter;
+  readonly encoding: Encoding;
+  /** What each column was taken for; null where it is left out. */
+  readonly columns: readonly { readonly heading: string; readonly field: StockField | null }[];
+}
+
+export type StockReading =
+  | { readonly ok: true; readonly file: StockFile }
+  | { readonly ok: false; readonly refusal: Refusal };
+
+/** Headings in small letters, without what stands in brackets. */
+const HEADINGS: Readonly<Record<StockField, readonly string[]>> = {
+  designation: [
+    ...['designation', 'section', 'profile', 'section size', 'size'],
+    ...['bezeichnung', 'profil', 'désignation', 'profilé'],
+  ],
+  table: ['table', 'section table', 'range', 'series', 'tabelle'],
+  lengths: [
+    ...['lengths', 'length', 'stock lengths', 'stock length', 'bar lengths', 'bar length'],
+    ...['längen', 'lagerlängen', 'länge', 'longueurs', 'longueur'],
+  ],
+  lead_time: ['lead time', 'lead', 'delivery', 'delivery time', 'lieferzeit', 'délai'],
+  price_band: ['price band', 'band', 'price', 'preisgruppe', 'gamme de prix'],
+  note: ['note', 'notes', 'remark', 'remarks', 'bemerkung', 'remarque'],
+};
+const FIELDS = Object.keys(HEADINGS) as StockField[];
+
+interface Heading {
+  readonly heading: string;
+  readonly field: StockField | null;
+  readonly unit: string;
+}
+
+function readHeading(cell: string): Heading {
+  const heading = cellText(cell).slice(0, 100);
+  const [, name = '', unit = ''] = /^([^([]*)[([]?([^)\]]*)[)\]]?$/.exec(heading.toLowerCase()) ?? [];
+  const plain = name.replaceAll(/[\s_]+/g, ' ').trim();
+  return {
+    heading,
+    field: FIELDS.find((one) => HEADINGS[one].includes(plain)) ?? null,
+    unit: unit.trim(),
+  };
+}
+
+/** The second column of the same meaning is left out. */
+const readHeadings = (cells: readonly string[]): Heading[] =>
+  cells
+    .map(readHeading)
+    .map((one, at, all) =>
+      all.findIndex(({ field }) => field === one.field) < at ? { ...one, field: null } : one,
+    );
+
+const knownIn = (cells: readonly string[]): number =>
+  readHeadings(cells).filter(({ field }) => field !== null).length;
+
+const DELIMITERS: readonly Delimiter[] = [';', '\t', '|', ','];
+
+/** What parts a line into the most headings that are known. */
+function delimiterOf(text: string): Delimiter {
+  const lines = text.split(/\r\n?|\n/, HEADING_LINES);
+  const known = (mark: Delimiter) => Math.max(0, ...lines.map((line) => knownIn(cellsOf(line, mark))));
+  return DELIMITERS.reduce((best, one) => (known(one) > known(best) ? one : best));
+}
+
+/** No heading of ours lies beyond. */
+const MOST_HEAD = 20_000; // characters
+const cellsOf = (line: string, delimiter: Delimiter): string[] =>
+  (Papa.parse(line.slice(0, MOST_HEAD), { delimiter }).data[0] as string[] | undefined)?.slice(
+    0,
+    MOST_COLUMNS,
+  ) ?? [];
+
+const refused = (code: Refusal['code'], message: string): StockReading => ({
+  ok: false,
+  refusal: { code, message },
+});
+
+const WRONG_HEADINGS =
+  'No line heads the columns of a stock list. One column at least is called “designation”; the others are “table”, “stock lengths (m)”, “lead time (days)”, “price band” and “note”.';
+
+/**
+ * The lines of a supplier's list, with the text of their cells. Encoding, delimiter and decimal mark are recognised.
+ * Refuses what is no table, and what is too long.
+ */
+export function readStockFile(bytes: Uint8Array): StockReading {
+  if (bytes.length === 0) return refused('empty', 'The file is empty. Choose the one with the list.');
+  if (bytes.length > MOST_BYTES)
+    return refused('too_large', 'The list is larger than 5 MB. Split it, or leave columns out.');
+  const refusal = refusalOf(bytes);
+  if (refusal) return { ok: false, refusal };
+  const read = encodingOf(bytes, true);
+  if (read.kind === 'refused') return { ok: false, refusal: read.refusal };
+  const encoding = read.kind === 'known' ? read.encoding : (read.choices[0] ?? 'utf-8');
+  const delimiter = delimiterOf(new TextDecoder(encoding).decode(bytes.subarray(0, MOST_HEAD)));
+  const lines = linesOf(bytes, encoding, delimiter);
+  return 'code' in lines ? { ok: false, refusal: lines } : readLines(lines, delimiter, encoding);
+}
+
+function linesOf(bytes: Uint8Array, encoding: Encoding, delimiter: Delimiter): FileLine[] | Refusal {
+  const reader = new LineReader({ encoding, delimiter });
+  const first = reader.push(bytes);
+  if ('code' in first) return first;
+  const last = reader.finish();
+  return 'code' in last ? last : [...first, ...last];
+}
+
+function readLines(lines: readonly FileLine[], delimiter: Delimiter, encoding: Encoding): StockReading {
+  const known = lines.slice(0, HEADING_LINES).map(({ cells }) => knownIn(cells.slice(0, MOST_COLUMNS)));
+  const at = known.indexOf(Math.max(...known));
+  const cells = lines[at]?.cells ?? [];
+  if (cells.length > MOST_COLUMNS)
+    return refused('too_many_columns', `The list has ${cells.length} columns; ${MOST_COLUMNS} is the most.`);
+  const headings = readHeadings(cells);
+  if (!headings.some(({ field }) => field === 'designation')) return refused('no_headings', WRONG_HEADINGS);
+  const body = lines.slice(at + 1).filter((line) => line.cells.some((cell) => cellText(cell) !== ''));
+  if (body.length === 0)
+    return refused('no_rows', 'The list has headings and no lines. Give at least one section.');
+  if (body.length > MOST_LINES)
+    return refused('too_many_rows', `The list has ${body.length} lines; ${MOST_LINES} is the most.`);
+  const column = (field: StockField) => headings.findIndex((one) => one.field === field);
+  const places = FIELDS.map((field) => [field, column(field)] as const);
+  const rows = body.map(({ number, cells: row }) => ({
+    line: number,
+    texts: Object.fromEntries(
+      places.map(([field, place]) => [field, cellText(row[place] ?? '')]),
+    ) as StockTexts,
+  }));
+  return {
+    ok: true,
+    file: { rows, as: readAs(headings, rows, delimiter), delimiter, encoding, columns: headings },
+  };
+}
+
+function readAs(headings: readonly Heading[], rows: readonly StockRow[], delimiter: Delimiter): ReadAs {
+  const unitOf = (field: StockField) => headings.find((one) => one.field === field)?.unit ?? '';
+  const length = unitOf('lengths');
+  return {
+    mark: lengthMarkOf(
+      rows.map(({ texts }) => texts.lengths),
+      delimiter,
+    ),
+    lengthUnit: unitFactor(length, 'length').ok ? length : 'm',
+    leadDays: /^(?:w|wk|week|woche|semaine)/.test(unitOf('lead_time')) ? 7 : 1,
+  };
+}
+
+const HEAD = ['designation', 'table', 'stock lengths (m)', 'lead time (days)', 'price band', 'note'];
+
+interface Written extends Holding {
+  readonly designation: string;
+  readonly table: string;
+}
+
+const toCells = ({ designation, table, lengths_m, lead_time_days, price_band, note }: Written) => [
+  designation,
+  table,
+  lengths_m.join('; '),
+  lead_time_days,
+  price_band,
+  note,
+];
+
+/** Lines as a CSV that is read again as it was. What a spreadsheet would take for a formula is made harmless. */
+export const stockCsv = (lines: readonly Written[]): string =>
+  Papa.unparse([HEAD, ...lines.map(toCells)], { escapeFormulae: true });
+
+/** Rows as such a CSV: what can be read in metres and days, what cannot as it stands. */
+export function rowsCsv(rows: readonly StockRow[], as: ReadAs): string {
+  const cells = rows.map(({ texts }) => {
+    const held = readHolding(texts, as);
+    const { designation, table, lengths, lead_time, price_band, note } = texts;
+    return 'lengths_m' in held
+      ? toCells({ ...held, designation, table })
+      : [designation, table, lengths, lead_time, price_band, note];
+  });
+  return Papa.unparse([HEAD, ...cells]);
+}

@@ -46,6 +46,8 @@ export const paths = {
   newRequest: (from: string) => `/library/requests/new?from=${encodeURIComponent(from)}`,
   sections: '/sections',
   buildSection: '/sections/build',
+  stock: '/sections/stock',
+  stockList: (supplier: string) => `/sections/stock/${encodeURIComponent(supplier)}`,
   section: (table: string, designation: string) =>
     `/sections/${encodeURIComponent(table)}/${encodeURIComponent(designation)}`,
   jobs: '/jobs',
@@ -92,6 +94,13 @@ export const paths = {
     sectionSpread: '/api/v1/sections/spread',
     section: (table: string, designation: string) =>
       `/api/v1/sections/${encodeURIComponent(table)}/${encodeURIComponent(designation)}`,
+    stock: '/api/v1/stock',
+    stockList: (supplier: string) => `/api/v1/stock/${encodeURIComponent(supplier)}`,
+    stockLines: (supplier: string) => `/api/v1/stock/${encodeURIComponent(supplier)}/lines`,
+    stockLine: (supplier: string, id: string) =>
+      `/api/v1/stock/${encodeURIComponent(supplier)}/lines/${encodeURIComponent(id)}`,
+    checkStock: (supplier: string) => `/api/v1/stock/${encodeURIComponent(supplier)}/check`,
+    stockCsv: (supplier: string) => `/api/v1/stock/${encodeURIComponent(supplier)}/csv`,
     imports: '/api/v1/imports',
     import: (id: string) => `/api/v1/imports/${encodeURIComponent(id)}`,
     search: '/api/v1/search',

@@ -49,14 +49,15 @@ export async function readForm({ request }: Holder): Promise<FormData> {
   }
 }
 
-async function readBytes(request: Request): Promise<Uint8Array<ArrayBuffer>> {
-  if (Number(request.headers.get('content-length') ?? 0) > BODY_LIMIT) throw tooLarge();
+/** The body as it is, refused (413) where it is longer than it may be. */
+export async function readBytes(request: Request, most = BODY_LIMIT): Promise<Uint8Array<ArrayBuffer>> {
+  if (Number(request.headers.get('content-length') ?? 0) > most) throw tooLarge(most);
   const chunks: Uint8Array[] = [];
   let size = 0;
   // Leaving the loop cancels the stream: what is too long is not read to its end.
   for await (const chunk of request.body ?? []) {
     size += chunk.byteLength;
-    if (size > BODY_LIMIT) throw tooLarge();
+    if (size > most) throw tooLarge(most);
     chunks.push(chunk);
   }
   const whole = new Uint8Array(size);
@@ -75,7 +76,8 @@ function decode(bytes: Uint8Array): string {
   }
 }
 
-const tooLarge = () => new AppError('too_large', 'The body is larger than 1 MB. Send less in one request.');
+const tooLarge = (most: number) =>
+  new AppError('too_large', `The body is larger than ${most / 1e6} MB. Send less in one request.`);
 
 function parse(text: string): unknown {
   if (text.trim() === '') throw new AppError('bad_json', 'The body is empty. Send a JSON document.');

@@ -3,6 +3,7 @@ import type { Tx } from '@/db/client';
 import { section } from '@/db/schema/section';
 import { stockLine, stockList } from '@/db/schema/stock';
 import { designationKey } from '@/engine/section';
+import { groupBy } from '@/lib/group-by';
 import type { SectionStock, Supplier } from './stock';
 
 /** Of sections: that a supplier holds them, this one or any. */
@@ -53,7 +54,7 @@ export async function withStock<T extends Named>(
       ),
     )
     .orderBy(asc(stockList.supplier), asc(stockList.slug));
-  const held = Map.groupBy(rows, ({ table, key }) => `${table}/${key}`);
+  const held = groupBy(rows, ({ table, key }) => `${table}/${key}`);
   return items.map((item, at) => {
     const stock = held.get(`${item.table}/${keys[at]}`)?.map(({ table: _t, key: _k, ...one }) => one);
     return stock ? { ...item, stock } : item;

@@ -1,4 +1,4 @@
-import { useState } from 'react';
+import { useId, useState } from 'react';
 import { RichHtml } from '@/components/drawing/marks/RichHtml';
 import { formatNumber, type UnitSystemName } from '@/engine/quantity';
 import type { Bound } from './address';
@@ -20,12 +20,16 @@ interface NumberBoundProps {
 const figure = (value: number): string => formatNumber(Number(value.toPrecision(6)));
 const read = (text: string): number => Number(text.replaceAll(/[\s\u202f]/g, '').replace(',', '.'));
 
-/** One end of a range in the unit shown; what is typed stays as typed while it is being typed. */
+/**
+ * One end of a range in the unit shown; what is typed stays as typed while it is being typed, and until it is put
+ * right where it is no number.
+ */
 export function NumberBound(props: NumberBoundProps) {
   const { label, name, field, value, system, placeholder, withUnit = false, onChange } = props;
+  const id = useId();
   const [text, setText] = useState<string | null>(null);
   const shown = text ?? (value === undefined ? '' : figure(toShown(field, value, system)));
-  const bad = text !== null && text.trim() !== '' && !Number.isFinite(read(text));
+  const isBad = text !== null && text.trim() !== '' && !Number.isFinite(read(text));
   return (
     <>
       <input
@@ -34,8 +38,8 @@ export function NumberBound(props: NumberBoundProps) {
         inputMode="decimal"
         autoComplete="off"
         aria-label={`${label}, ${unitOf(field, system)}`}
-        aria-invalid={bad || undefined}
-        title={bad ? `Give a number, such as 310. The unit is ${unitOf(field, system)}.` : undefined}
+        aria-invalid={isBad || undefined}
+        aria-describedby={isBad ? id : undefined}
         placeholder={placeholder}
         value={shown}
         onChange={(event) => {
@@ -44,12 +48,21 @@ export function NumberBound(props: NumberBoundProps) {
           if (typed.trim() === '') onChange(name, null);
           else if (Number.isFinite(read(typed))) onChange(name, fromShown(field, read(typed), system));
         }}
-        onBlur={() => setText(null)}
+        onBlur={() => !isBad && setText(null)}
       />
       {withUnit && (
         <span className="text-ink-2">
           <RichHtml text={richUnitOf(field, system)} />
         </span>
+      )}
+      {isBad && (
+        <p
+          id={id}
+          role="alert"
+          className="order-last col-span-full basis-full text-note font-semibold text-error first-letter:uppercase"
+        >
+          {label}: give a number, such as 310. The unit is {unitOf(field, system)}.
+        </p>
       )}
     </>
   );

@@ -98,7 +98,7 @@ export function RangeFilter({ measure, state, system, spread, onBound }: RangeFi
   );
   return (
     <div className="min-w-0 border-rule px-18 pt-14 pb-12 max-lg:border-t lg:border-l max-md:px-12 md:max-lg:nth-2:border-t-0 md:max-lg:nth-[even]:border-l">
-      <div className="flex items-center gap-8">
+      <div className="flex flex-wrap items-center gap-8">
         <span className="mr-auto font-semibold">
           {measure === 'depth' ? 'Depth' : 'Mass'} <i className="font-normal">{FIELD_WORDS[field].symbol}</i>
         </span>

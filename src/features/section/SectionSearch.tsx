@@ -2,7 +2,7 @@ import { useCallback, useMemo, useState } from 'react';
 import { Button } from '@/components/ui/Button';
 import { useKeys } from '@/components/ui/use-keys';
 import type { UnitSystemName } from '@/engine/quantity';
-import { EMPTY, type PageState, withSort } from './address';
+import { cleared, type PageState, withSort } from './address';
 import type { Answer, FirstAnswer } from './answer';
 import { Comparison } from './Comparison';
 import { EditionBlock } from './EditionBlock';
@@ -109,7 +109,7 @@ function Schedule({
         onSaid={found.setSaid}
       />
       {answer.total === 0 && answer.isSettled ? (
-        <NoSection state={state} onClear={() => setState(({ pins }) => ({ ...EMPTY, pins }))} />
+        <NoSection state={state} onClear={() => setState(cleared)} />
       ) : (
         <SectionTable
           {...{ system, uses, onView }}

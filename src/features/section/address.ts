@@ -21,6 +21,10 @@ export interface PageState {
   /** The address of a stock list; empty for anybody's. */
   readonly supplier: string;
   readonly bounds: Readonly<Partial<Record<Bound, number>>>;
+  /** What is bounded at a line of its own, or is about to be: the address has its bounds alone. */
+  readonly required: readonly SectionMeasure[];
+  /** What the schedule shows, in order; null where the person's own choice holds. */
+  readonly columns: readonly SectionMeasure[] | null;
   /** Keys of the pinned sections, first pinned first. */
   readonly pins: readonly string[];
 }
@@ -33,17 +37,29 @@ export const EMPTY: PageState = {
   stock: '',
   supplier: '',
   bounds: {},
+  required: [],
+  columns: null,
   pins: [],
 };
 export const MOST_PINS = 4;
 
+export const MEASURES = Object.keys(SECTION_MEASURES) as SectionMeasure[];
+
+/** Bounds that have a field of their own: of depth and mass either end, of these one. */
+export const USUAL_BOUNDS = ['w_pl_min', 'i_major_min', 'width_max'] as const satisfies readonly Bound[];
+const WITH_FIELD: readonly string[] = ['depth_min', 'depth_max', 'mass_min', 'mass_max', ...USUAL_BOUNDS];
+
 export const keyOf = ({ table, designation }: Pick<SectionItem, 'table' | 'designation'>): string =>
   `${table}/${designation}`;
 
-const BOUNDS = Object.keys(SECTION_MEASURES).flatMap((measure) => [
-  `${measure}_min`,
-  `${measure}_max`,
-]) as Bound[];
+const endsOf = (measure: SectionMeasure) => [`${measure}_min`, `${measure}_max`] as const;
+const BOUNDS: readonly Bound[] = MEASURES.flatMap(endsOf);
+
+/** Measures by their names, each once and in their order; what is none is left out. */
+export const readColumns = (names: readonly string[]): readonly SectionMeasure[] | null => {
+  const known = new Set(names.filter((name) => MEASURES.includes(name as SectionMeasure)));
+  return known.size === 0 ? null : ([...known] as SectionMeasure[]);
+};
 
 /** What an address asks for; a part of it that cannot be read asks for nothing. */
 export function readAddress(search: string): PageState {
@@ -64,25 +80,41 @@ export function readAddress(search: string): PageState {
     stock: read('stock', sectionQueryFields.stock) ?? '',
     supplier: read('supplier', sectionQueryFields.supplier) ?? '',
     bounds: Object.fromEntries(bounds),
+    required: MEASURES.filter((measure) =>
+      endsOf(measure).some((end) => !WITH_FIELD.includes(end) && bounds.some(([name]) => name === end)),
+    ),
+    columns: readColumns(given.get('columns')?.split(/[\s,]+/) ?? []),
     pins: [...new Set(given.getAll('pin'))].slice(0, MOST_PINS),
   };
 }
 
-export function writeAddress({ bounds, pins, ...words }: PageState): string {
+export function writeAddress({ bounds, pins, required: _, columns, ...words }: PageState): string {
   const entries = [
     ...Object.entries(words).filter(([, value]) => value !== ''),
     ...Object.entries(bounds).map(([name, value]) => [name, String(value)]),
+    ...(columns === null ? [] : [['columns', columns.join(' ')]]),
     ...pins.map((pin) => ['pin', pin]),
   ];
   const search = new URLSearchParams(entries).toString();
   return search === '' ? '' : `?${search}`;
 }
 
-/** What is asked, pins apart: the query of the list's endpoint too. */
-export const askedOf = (state: PageState): string => writeAddress({ ...state, pins: [] });
+/** What is asked, and not how it is shown: the query of the list's endpoint too. */
+export const askedOf = (state: PageState): string => writeAddress({ ...state, columns: null, pins: [] });
 
-export const queryOf = ({ bounds, pins: _, ...words }: PageState): SectionQuery =>
-  toSectionQuery({ ...words, ...bounds });
+export const queryOf = (state: PageState): SectionQuery => toSectionQuery({ ...state, ...state.bounds });
+
+/** Nothing asked; what is pinned and shown stays. */
+export const cleared = ({ pins, columns }: PageState): PageState => ({ ...EMPTY, pins, columns });
+
+export const withRequired = (state: PageState, measure: SectionMeasure): PageState =>
+  state.required.includes(measure) ? state : { ...state, required: [...state.required, measure] };
+
+/** Takes a measure's line out, and its bounds with it. */
+export function withoutRequired(state: PageState, measure: SectionMeasure): PageState {
+  const lifted = endsOf(measure).reduce((now, name) => withBound(now, name, null), state);
+  return { ...lifted, required: state.required.filter((one) => one !== measure) };
+}
 
 /** Sets or lifts a bound. */
 export function withBound(state: PageState, name: Bound, value: number | null): PageState {

@@ -1,3 +1,6 @@
+/** A designation as one part of an address: the slash of L4x4x1/4 as a fraction slash, which is read as the same. */
+const designationSegment = (designation: string) => encodeURIComponent(designation.replaceAll('/', '\u2044'));
+
 /** Every address of the product. No URL is spelled twice. */
 export const paths = {
   home: '/',
@@ -49,7 +52,7 @@ export const paths = {
   stock: '/sections/stock',
   stockList: (supplier: string) => `/sections/stock/${encodeURIComponent(supplier)}`,
   section: (table: string, designation: string) =>
-    `/sections/${encodeURIComponent(table)}/${encodeURIComponent(designation)}`,
+    `/sections/${encodeURIComponent(table)}/${designationSegment(designation)}`,
   jobs: '/jobs',
   newJob: '/jobs/new',
   job: (number: string) => `/jobs/${encodeURIComponent(number)}`,
@@ -93,7 +96,7 @@ export const paths = {
     sections: '/api/v1/sections',
     sectionSpread: '/api/v1/sections/spread',
     section: (table: string, designation: string) =>
-      `/api/v1/sections/${encodeURIComponent(table)}/${encodeURIComponent(designation)}`,
+      `/api/v1/sections/${encodeURIComponent(table)}/${designationSegment(designation)}`,
     stock: '/api/v1/stock',
     stockList: (supplier: string) => `/api/v1/stock/${encodeURIComponent(supplier)}`,
     stockLines: (supplier: string) => `/api/v1/stock/${encodeURIComponent(supplier)}/lines`,

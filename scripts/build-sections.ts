@@ -3,15 +3,19 @@ import Papa from 'papaparse';
 import { readSectionTable } from '../src/features/section/import';
 import { sectionTableMetaSchema } from '../src/features/section/section';
 import {
+  fromInches,
   headings,
   INCHES,
   METRIC,
   type Radius,
+  radiusByRule,
   radiusFromMass,
+  radiusGiven,
   radiusOfChannel,
   radiusOfSeries,
   type Source,
   tableRow,
+  teeOf,
   type Units,
 } from './section-tables';
 
@@ -48,6 +52,14 @@ const PLANS: readonly Plan[] = [
   { slug: 'british-columns', families: ['UC'], radius: radiusFromMass },
   { slug: 'american-wide-flange', families: ['W'], units: INCHES, radius: radiusFromMass },
   { slug: 'parallel-channels', families: ['UPE'], radius: radiusOfChannel },
+  { slug: 'european-tapered-i', families: ['IPN'], radius: radiusGiven },
+  { slug: 'european-tapered-channels', families: ['UPN'], radius: radiusGiven },
+  { slug: 'american-tapered-i', families: ['S'], units: INCHES, radius: radiusByRule },
+  { slug: 'american-tapered-channels', families: ['C'], units: INCHES, radius: radiusByRule },
+  { slug: 'american-tees', families: ['WT'], units: INCHES, radius: radiusByRule },
+  { slug: 'equal-angles', families: ['L equal'], radius: radiusGiven },
+  { slug: 'unequal-angles', families: ['L unequal'], radius: radiusGiven },
+  { slug: 'american-angles', families: ['L inch'], units: INCHES, radius: radiusByRule },
   { slug: 'hollow-round', families: ['CHS'] },
   { slug: 'hollow-square', families: ['SHS'] },
   { slug: 'hollow-rectangular', families: ['RHS'] },
@@ -90,7 +102,13 @@ function build(plan: Plan, sources: readonly Source[]): number {
   return reading.rows.length;
 }
 
-const sources = [...readSource('section-dimensions.csv'), ...readSource('additions.csv')];
+const inMm = [...readSource('section-dimensions.csv'), ...readSource('additions.csv')];
+const wide = inMm.filter(({ family }) => family === 'W');
+const sources = [
+  ...inMm,
+  ...readSource('additions-inch.csv').map(fromInches),
+  ...wide.map((row) => teeOf(row, radiusFromMass(row, wide))),
+];
 const counts = PLANS.map((plan) => ({ slug: plan.slug, rows: build(plan, sources) }));
 for (const { slug, rows } of counts) console.log(`${slug}: ${rows} sections`);
 console.log(`${counts.reduce((sum, { rows }) => sum + rows, 0)} sections in ${counts.length} tables`);

@@ -1,7 +1,7 @@
 import { fromUnit, toUnit } from '../src/engine/quantity';
-import { cornerRadii, sectionProperties } from '../src/engine/section';
+import { cornerRadii, sectionProperties, taper } from '../src/engine/section';
 
-/** A line of data/sections/source/*.csv, sizes in mm as written there. */
+/** A line of data/sections/source/*.csv: sizes in mm, masses in kg/m. */
 export type Source = {
   family: string;
   name: string;
@@ -21,6 +21,8 @@ export type Sizes = { h: number; b: number; tw: number; tf: number; t: number };
 export type Radius = { r: number; computed: boolean };
 
 const MM = 1e-3;
+const INCH = 25.4; // mm
+const POUND_PER_FOOT = 0.45359237 / 0.3048; // kg/m
 const STEEL = 7850; // kg/m³
 const FILLETS = 4 - Math.PI; // area of the four root fillets per r²
 
@@ -35,6 +37,24 @@ export const sizesOf = (row: Source): Sizes => {
   // the source gives a channel's depth and flange width the other way round
   return row.shape === 'U' ? { ...sizes, h: sizes.b, b: sizes.h } : sizes;
 };
+
+const times = (text: string, factor: number) => (text === '' ? '' : String(Number(text) * factor));
+
+/** A line that is written in inches and lb/ft. */
+export const fromInches = (row: Source): Source => ({
+  ...row,
+  ...Object.fromEntries(
+    (['h', 'b', 'tw', 'tf', 'r', 't'] as const).map((size) => [size, times(row[size], INCH)]),
+  ),
+  mass_nominal: times(row.mass_nominal, POUND_PER_FOOT),
+});
+
+/** W12x26 cut along the middle of its web: WT6x13, half as deep and half as heavy, with the root radius of the whole. */
+export function teeOf(row: Source, { r }: Radius): Source {
+  const half = row.name.replaceAll(/\d+(\.\d+)?/g, (size) => times(size, 0.5)).replace('W', 'WT');
+  const [h, mass_nominal] = [times(row.h, 0.5), times(row.mass_nominal, 0.5)];
+  return { ...row, family: 'WT', name: half, shape: 'T', h, r: String(r), mass_nominal };
+}
 
 /** r² in mm² that makes up the difference between the nominal mass and the area without fillets. */
 function squareFromMass(row: Source): number {
@@ -103,6 +123,11 @@ export function radiusOfChannel(row: Source): Radius {
   return { r, computed: true };
 }
 
+/** As the standard has it. */
+export const radiusGiven = ({ r }: Source): Radius => ({ r: Number(r), computed: false });
+/** By a rule, or as the whole section has it. */
+export const radiusByRule = ({ r }: Source): Radius => ({ r: Number(r), computed: true });
+
 export type Units = {
   length: string;
   mass: string;
@@ -145,15 +170,31 @@ const PROPERTIES = [
   ['I_w', 'warping', 'iw', 'iw_cm6'],
 ] as const;
 
+const FLANGED = ['h', 'b', 't_w', 't_f', 'r'];
 const SIZE_COLUMNS: Readonly<Record<string, readonly string[]>> = {
-  I: ['h', 'b', 't_w', 't_f', 'r'],
-  U: ['h', 'b', 't_w', 't_f', 'r'],
+  I: FLANGED,
+  'tapered I': FLANGED,
+  U: FLANGED,
+  'tapered U': FLANGED,
+  T: FLANGED,
+  L: ['h', 'b', 't', 'r'],
   RHS: ['h', 'b', 't'],
   SHS: ['h', 'b', 't'],
   CHS: ['h', 't'],
   rectangle: ['h', 'b'],
 };
-const SHAPES = { I: 'i', U: 'channel', RHS: 'rhs', SHS: 'shs', CHS: 'chs', rectangle: 'rectangle' } as const;
+const SHAPES = {
+  I: 'i',
+  'tapered I': 'tapered_i',
+  U: 'channel',
+  'tapered U': 'tapered_channel',
+  T: 'tee',
+  L: 'angle',
+  RHS: 'rhs',
+  SHS: 'shs',
+  CHS: 'chs',
+  rectangle: 'rectangle',
+} as const;
 const isShape = (text: string): text is keyof typeof SHAPES => Object.hasOwn(SHAPES, text);
 
 export function headings(shape: string, units: Units): string[] {
@@ -174,7 +215,8 @@ export type RowOptions = {
   rename?: (name: string) => string;
 };
 
-function propertiesOf(shape: keyof typeof SHAPES, mm: Record<string, number>) {
+/** Taper and toes are those of the standards that the sizes are printed for: European in mm, American in inches. */
+function propertiesOf(shape: keyof typeof SHAPES, mm: Record<string, number>, { length }: Units) {
   const {
     h = 0,
     b = 0,
@@ -186,7 +228,15 @@ function propertiesOf(shape: keyof typeof SHAPES, mm: Record<string, number>) {
   switch (shape) {
     case 'I':
     case 'U':
-      return sectionProperties({ shape: shape === 'I' ? 'i' : 'channel', h, b, tw: t_w, tf: t_f, r });
+    case 'T':
+      return sectionProperties({ shape: SHAPES[shape], h, b, tw: t_w, tf: t_f, r });
+    case 'tapered I':
+    case 'tapered U': {
+      const origin = length === 'in' ? 'american' : 'european';
+      return sectionProperties(taper(SHAPES[shape], { h, b, tw: t_w, tf: t_f, r }, origin));
+    }
+    case 'L':
+      return sectionProperties({ shape: 'angle', h, b, t, r, toe: length === 'in' ? 0 : r / 2 });
     case 'RHS':
     case 'SHS':
       return sectionProperties({ shape: SHAPES[shape], h, b, t, ...cornerRadii(t, 'EN 10210') });
@@ -208,7 +258,7 @@ export function tableRow(row: Source, { units, density, radius, rename }: RowOpt
   const used = Object.fromEntries(
     printed.map(([symbol, text]) => [symbol, toUnit(fromUnit(Number(text), units.length), 'mm')]),
   );
-  const properties = propertiesOf(row.shape, used);
+  const properties = propertiesOf(row.shape, used, units);
   const mass = toUnit(Number(row.mass_nominal) || density * properties.area, massUnit(units));
   const computed = [
     ...(radius?.computed ? ['r'] : []),

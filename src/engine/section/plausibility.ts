@@ -278,14 +278,15 @@ function checkDesignWall(
   return true;
 }
 
-const THIN_FLANGE = 0.8; // of the web
+const THIN_FLANGE = { i: 0.8, tapered_i: 0.7 } as const; // of the web; American S are rolled down to 0.74
 const SLENDER = [0.9, 4.5] as const; // depth over width of an I
 
 function checkProportions(comparison: Comparison, d: SectionDimensions): void {
   if (d.shape !== 'i' && d.shape !== 'tapered_i') return;
   const ratio = d.h / d.b;
-  if (d.tf < THIN_FLANGE * d.tw) {
-    const formula = `t_f/t_w is ${(d.tf / d.tw).toFixed(2)}; usual is 0.80 or more`;
+  const least = THIN_FLANGE[d.shape];
+  if (d.tf < least * d.tw) {
+    const formula = `t_f/t_w is ${(d.tf / d.tw).toFixed(2)}; usual is ${least.toFixed(2)} or more`;
     comparison.report('proportions', 'warning', 'area', formula, 'Flange and web look exchanged');
   }
   if (ratio < SLENDER[0] || ratio > SLENDER[1]) {

@@ -3,18 +3,21 @@ interface ShapeFilterProps {
   readonly onChange: (shape: string) => void;
 }
 
+/** Groups of shapes as the search knows them; "made" are outlines, values that are known, and round bars. */
 const SHAPES = [
   { shape: 'i', word: 'I', path: 'M4 2h20v4H16v20h8v4H4v-4h8V6H4z' },
   { shape: 'channel', word: 'channel', path: 'M6 2h16v4H11v20h11v4H6z' },
+  { shape: 'tee', word: 'tee', path: 'M4 2h20v4h-8v24h-4V6H4z' },
+  { shape: 'angle', word: 'angle', path: 'M6 2h4v24h14v4H6z' },
   { shape: 'hollow', word: 'hollow', path: 'M5 2h18v28H5zM8.5 5.500v21h11v-21z' },
   { shape: 'timber', word: 'timber', path: 'M6 2h16v28H6zM6 9h16M6 16h16M6 23h16' },
-  { shape: 'other', word: 'other', path: 'M6 2h4v24h14v4H6z' },
+  { shape: 'other', word: 'made', path: 'M3 2h22v4H17v20h8v4H3v-4h8V6H3zM7 6v20M21 6v20' },
 ] as const;
 
 /** Shapes as they are drawn; a second press takes the choice back. */
 export function ShapeFilter({ value, onChange }: ShapeFilterProps) {
   return (
-    <fieldset className="mt-10 grid grid-cols-5">
+    <fieldset className="mt-10 grid grid-cols-4">
       <legend className="sr-only">Shape</legend>
       {SHAPES.map(({ shape, word, path }) => {
         const chosen = value === shape;

@@ -63,7 +63,7 @@ const SHAPE_NAMES: Readonly<Record<string, readonly SectionShape[]>> = {
   c: ['channel', 'tapered_channel'],
   t: ['tee'],
   l: ['angle'],
-  other: ['tee', 'angle', 'outline', 'values'],
+  other: ['round', 'outline', 'values'],
   hollow: ['rhs', 'shs', 'chs'],
   timber: ['rectangle'],
 };

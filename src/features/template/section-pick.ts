@@ -1,4 +1,4 @@
-import type { Material } from '@/engine/section';
+import type { Material, SectionShape } from '@/engine/section';
 import type { MaterialChoice } from '@/features/material/choice';
 import { resolveSection, type SectionValues } from '@/features/section/resolve';
 import type { RowOrigin } from '@/features/section/section';
@@ -12,16 +12,22 @@ export const isMadeOf = (
 
 const USUAL: Readonly<Record<string, string>> = {
   'american-wide-flange': 'a992',
+  'american-tees': 'a992',
+  'american-tapered-i': 'a36',
+  'american-tapered-channels': 'a36',
+  'american-angles': 'a36',
   'dimension-lumber': 'dfl-no2',
   'glulam-inch': '24f-v4',
   glulam: 'gl24h',
 };
 
+const HOLLOW: readonly SectionShape[] = ['rhs', 'shs', 'chs'];
+
 /** What a section of a table is usually made of. */
 export function usualMaterial({ dimensions }: Pick<SectionValues, 'dimensions'>, table: string): string {
   const { shape } = dimensions;
   if (shape === 'rectangle') return USUAL[table] ?? 'c24';
-  return USUAL[table] ?? (shape === 'i' || shape === 'channel' ? 's355' : 's355h');
+  return USUAL[table] ?? (HOLLOW.includes(shape) ? 's355h' : 's355');
 }
 
 export type PickOutcome =

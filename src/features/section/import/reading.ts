@@ -273,7 +273,14 @@ export function readRow(line: FileLine, plan: Plan): RowRead {
   return { line, printed, name: designationParts(printed), shape, values, findings };
 }
 
-/** Dimensions in m; NaN where a size is missing. A root radius that is missing is 0. */
+/** By its axis letters, or its sizes in inches: flanges and toes are rolled otherwise than in Europe. */
+const isAmerican = ({ axes, columns }: Mapping): boolean =>
+  axes === 'us' || columns.some(({ field, unit }) => field === 'h' && unit === 'in');
+
+/**
+ * Dimensions in m; NaN where a size is missing. A root radius that is missing is 0. Toes of angles are half the root (EN
+ * 10056-1), square in American tables.
+ */
 export function dimensionsOf(shape: SectionShape, values: Values, mapping: Mapping): SectionDimensions {
   const { h = Number.NaN, b = h, tw = Number.NaN, tf = Number.NaN, r = 0, t = Number.NaN } = values;
   const standard = mapping.tubeStandard;
@@ -285,9 +292,9 @@ export function dimensionsOf(shape: SectionShape, values: Values, mapping: Mappi
       return { shape, h, b, tw, tf, r };
     case 'tapered_i':
     case 'tapered_channel':
-      return taper(shape, { h, b, tw, tf, r }, mapping.axes === 'us' ? 'american' : 'european');
+      return taper(shape, { h, b, tw, tf, r }, isAmerican(mapping) ? 'american' : 'european');
     case 'angle':
-      return { shape, h, b, t, r, toe: r / 2 };
+      return { shape, h, b, t, r, toe: isAmerican(mapping) ? 0 : r / 2 };
     case 'rhs':
     case 'shs':
       return { shape, h, b, t: wall, ...cornerRadii(wall, standard) };

@@ -106,6 +106,8 @@ describe('a query that forgets its WHERE', () => {
     'section_import',
     'import_acceptance',
     'import_mapping',
+    'stock_list',
+    'stock_line',
   ])('of %s sees nothing before a practice is set', async (table) => {
     expect(await as(null, `select * from ${table}`)).toHaveLength(0);
   });

@@ -62,8 +62,10 @@ function sectionOf({ texts: { designation, table } }: StockRow, { sections, tabl
     const message = `Several tables have this section. Say which one is meant: ${tablesOf}.`;
     return fault('table', designation, 'several_tables', message, [first, ...others]);
   }
-  const where = slug === null ? 'No issued edition' : `The issued edition of “${slug}” does not have it`;
-  const message = slug === null ? `${where} has this section.` : `${where}.`;
+  const message =
+    slug === null
+      ? 'No issued edition has this section.'
+      : `The issued edition of “${slug}” does not have this section.`;
   return fault('designation', designation, 'unknown_section', message, called);
 }
 
@@ -85,7 +87,8 @@ export function matchRows(rows: readonly StockRow[], as: ReadAs, library: Librar
     }
     if ('message' in found || !('lengths_m' in held) || known !== undefined) continue;
     seen.set(`${found.table}/${found.designation}`, line);
-    lines.push({ ...held, ...found, key: designationKey(found.designation) });
+    const { table, designation } = found;
+    lines.push({ ...held, table, designation, key: designationKey(designation) });
   }
   return { lines, faults };
 }

@@ -94,6 +94,39 @@ export const NewStockLine = Holding.extend({
 });
 export type NewStockLine = z.output<typeof NewStockLine>;
 
+const named = z.strictObject({ table: z.string(), designation: z.string() });
+
+/** What a CSV of lines comes to, with nothing kept of it. */
+export const StockCheck = z.strictObject({
+  rows: z.int(),
+  /** Rows that can be kept as they are. */
+  good: z.int(),
+  fault_count: z.int(),
+  /** The first of them. */
+  faults: z.array(
+    z.strictObject({
+      /** Of the file, from 1. */
+      line: z.int(),
+      field: z.string(),
+      value: z.string(),
+      code: z.string(),
+      message: z.string(),
+      /** Sections that may be meant. */
+      suggestions: z.array(named),
+    }),
+  ),
+  read_as: z.strictObject({
+    delimiter: z.string(),
+    /** Null: the file does not tell. */
+    decimal_mark: z.enum(['.', ',']).nullable(),
+    encoding: z.string(),
+    length_unit: z.string(),
+    /** Null: left out. */
+    columns: z.array(z.strictObject({ heading: z.string(), field: z.string().nullable() })),
+  }),
+});
+export type StockCheck = z.output<typeof StockCheck>;
+
 const DAY_MS = 86_400_000;
 
 /** Whole days from a day to another, both as 2026-11-19. */

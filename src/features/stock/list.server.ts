@@ -1,0 +1,209 @@
+import { and, asc, count, eq, getTableColumns, sql } from 'drizzle-orm';
+import type { Tx } from '@/db/client';
+import { person } from '@/db/schema/account';
+import { stockLine, stockList } from '@/db/schema/stock';
+import { withPractice } from '@/db/tenancy';
+import { requirePermission } from '@/features/account/permission';
+import type { AuditEntry } from '@/features/audit/audit';
+import { recordAudit } from '@/features/audit/audit.server';
+import type { Actor } from '@/features/review/rows.server';
+import { AppError, invalid, notFound, stale } from '@/lib/app-error';
+import { suppliersOf } from './of-sections.server';
+import {
+  daysBetween,
+  type NewStockList,
+  type StockListChange,
+  type StockListView,
+  type Supplier,
+  slugOf,
+} from './stock';
+
+export type StockRow = typeof stockList.$inferSelect;
+
+const select = (tx: Tx, practiceId: string) =>
+  tx
+    .select({
+      ...getTableColumns(stockList),
+      changedBy: person.name,
+      lines: sql<number>`(${tx
+        .select({ lines: count() })
+        .from(stockLine)
+        .where(
+          and(eq(stockLine.practiceId, stockList.practiceId), eq(stockLine.listId, stockList.id)),
+        )})`.mapWith(Number),
+    })
+    .from(stockList)
+    .innerJoin(person, eq(person.id, stockList.changedById))
+    .where(eq(stockList.practiceId, practiceId))
+    .$dynamic();
+
+type Found = Awaited<ReturnType<typeof select>>[number];
+
+const toView = (row: Found): StockListView => ({
+  slug: row.slug,
+  supplier: row.supplier,
+  note: row.note,
+  as_of: row.asOf,
+  lines: row.lines,
+  version: row.version,
+  changed_by: row.changedBy,
+  changed_at: row.changedAt.toISOString(),
+});
+
+/** Every stock list of the practice, by supplier. */
+export function listStock(actor: Actor): Promise<StockListView[]> {
+  requirePermission(actor, 'library.read');
+  return withPractice(actor, async (tx) => {
+    const rows = await select(tx, actor.practiceId).orderBy(asc(stockList.supplier), asc(stockList.slug));
+    return rows.map(toView);
+  });
+}
+
+/** Whose stock the practice knows, for filters. */
+export function listSuppliers(actor: Actor): Promise<Supplier[]> {
+  requirePermission(actor, 'library.read');
+  return withPractice(actor, (tx) => suppliersOf(tx, actor.practiceId));
+}
+
+export function readStockList(actor: Actor, slug: string): Promise<StockListView> {
+  requirePermission(actor, 'library.read');
+  return withPractice(actor, (tx) => viewOf(tx, actor.practiceId, slug));
+}
+
+export async function viewOf(tx: Tx, practiceId: string, slug: string): Promise<StockListView> {
+  const [row] = await select(tx, practiceId).where(
+    and(eq(stockList.practiceId, practiceId), eq(stockList.slug, slug)),
+  );
+  if (!row) throw notFound('This stock list');
+  return toView(row);
+}
+
+/** The row of a list, or 404. */
+export async function requireList(tx: Tx, practiceId: string, slug: string): Promise<StockRow> {
+  const [row] = await tx
+    .select()
+    .from(stockList)
+    .where(and(eq(stockList.practiceId, practiceId), eq(stockList.slug, slug)));
+  if (!row) throw notFound('This stock list');
+  return row;
+}
+
+/** A day that is still to come in every time zone is a slip. */
+export function requirePast(asOf: string): void {
+  if (daysBetween(new Date().toISOString().slice(0, 10), asOf) <= 1) return;
+  const message = 'This day is still to come. Give the day that the stock was true of.';
+  throw invalid([{ pointer: '/as_of', code: 'out_of_range', message }]);
+}
+
+/** Begins the list of a supplier, empty. */
+export async function createStockList(actor: Actor, given: NewStockList): Promise<StockListView> {
+  requirePermission(actor, 'stock.edit');
+  requirePast(given.as_of);
+  const slug = slugOf(given.supplier);
+  return withPractice(actor, async (tx) => {
+    const [made] = await tx
+      .insert(stockList)
+      .values({
+        practiceId: actor.practiceId,
+        slug,
+        supplier: given.supplier,
+        note: given.note,
+        asOf: given.as_of,
+        createdById: actor.personId,
+        changedById: actor.personId,
+      })
+      .onConflictDoNothing({ target: [stockList.practiceId, stockList.slug] })
+      .returning({ id: stockList.id });
+    if (!made) throw taken(given.supplier);
+    const after = { supplier: given.supplier, as_of: given.as_of, note: given.note };
+    await record(tx, actor, made.id, { action: 'stock.create', after });
+    return viewOf(tx, actor.practiceId, slug);
+  });
+}
+
+function taken(supplier: string): AppError {
+  const message = `There is a stock list of “${supplier}” already. Replace its lines instead.`;
+  return new AppError('conflict', message, {
+    faults: [{ pointer: '/supplier', code: 'taken', message }],
+  });
+}
+
+/** Writes an event of a list: after everything else of the transaction. */
+export const record = (
+  tx: Tx,
+  actor: Actor,
+  id: string,
+  entry: Omit<AuditEntry, 'subjectKind' | 'subjectId'>,
+): Promise<void> => recordAudit(tx, actor, { ...entry, subjectKind: 'stock', subjectId: id });
+
+type Change = Partial<Pick<StockRow, 'supplier' | 'note' | 'asOf'>>;
+
+/**
+ * Holds a list that a person changes, who has read this version of it: 404, or 412 with the list as it stands. Until
+ * the transaction ends nobody else changes the list or its lines.
+ */
+export async function stepList(
+  tx: Tx,
+  actor: Actor,
+  slug: string,
+  version: number,
+  change: Change = {},
+): Promise<StockRow> {
+  const { practiceId, personId } = actor;
+  const [row] = await tx
+    .update(stockList)
+    .set({
+      ...change,
+      version: sql`${stockList.version} + 1`,
+      changedById: personId,
+      changedAt: sql`now()`,
+    })
+    .where(
+      and(eq(stockList.practiceId, practiceId), eq(stockList.slug, slug), eq(stockList.version, version)),
+    )
+    .returning();
+  if (row) return row;
+  throw stale(await viewOf(tx, practiceId, slug));
+}
+
+/** Changes what is said of a list: its supplier's name, its day, its note. Its address stays. */
+export async function changeStockList(
+  actor: Actor,
+  slug: string,
+  version: number,
+  { supplier, as_of: asOf, note }: StockListChange,
+): Promise<StockListView> {
+  requirePermission(actor, 'stock.edit');
+  if (asOf !== undefined) requirePast(asOf);
+  return withPractice(actor, async (tx) => {
+    const before = await viewOf(tx, actor.practiceId, slug);
+    const change = {
+      ...(supplier !== undefined && { supplier }),
+      ...(asOf !== undefined && { asOf }),
+      ...(note !== undefined && { note }),
+    };
+    const { id } = await stepList(tx, actor, slug, version, change);
+    const after = await viewOf(tx, actor.practiceId, slug);
+    await record(tx, actor, id, { action: 'stock.change', before: saidOf(before), after: saidOf(after) });
+    return after;
+  });
+}
+
+const saidOf = ({ supplier, as_of, note }: StockListView) => ({ supplier, as_of, note });
+
+/** Removes a list with its lines; the record keeps that it was. */
+export async function removeStockList(actor: Actor, slug: string, version: number): Promise<void> {
+  requirePermission(actor, 'stock.edit');
+  await withPractice(actor, async (tx) => {
+    const before = await viewOf(tx, actor.practiceId, slug);
+    const { id } = await stepList(tx, actor, slug, version);
+    await tx
+      .delete(stockLine)
+      .where(and(eq(stockLine.practiceId, actor.practiceId), eq(stockLine.listId, id)));
+    await tx.delete(stockList).where(and(eq(stockList.practiceId, actor.practiceId), eq(stockList.id, id)));
+    await record(tx, actor, id, {
+      action: 'stock.remove',
+      before: { ...saidOf(before), lines: before.lines },
+    });
+  });
+}

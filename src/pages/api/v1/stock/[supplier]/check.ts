@@ -1,0 +1,16 @@
+import { MOST_BYTES } from '@/features/stock/file';
+import { checkStock } from '@/features/stock/replace.server';
+import { StockCheck } from '@/features/stock/stock';
+import { readBytes } from '@/http/body';
+import { endpoint } from '@/http/endpoint';
+
+export const POST = endpoint(
+  {
+    summary: 'What a CSV of stock lines comes to, with nothing kept of it',
+    description:
+      'The body is the CSV as PUT …/lines takes it. Each line that matches no section of an issued edition, or several, is named with its value and the reason.',
+    answer: StockCheck,
+  },
+  async ({ request, params: { supplier = '' } }, { user }) =>
+    checkStock(user, supplier, await readBytes(request, MOST_BYTES)),
+);

@@ -39,3 +39,4 @@ export {
 } from './plausibility';
 export { type SectionProperties, sectionProperties } from './properties';
 export { roundCorners } from './rings';
+export { type FreeBending, freeBending, sectionCautions } from './unsymmetric';

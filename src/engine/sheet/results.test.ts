@@ -40,6 +40,7 @@ const SECTION: NonNullable<SheetInput['section']> = {
   edition: 2,
   material: { name: 'C24', e: 11e9, source: 'EN 338' },
   computed: [],
+  cautions: [],
 };
 
 describe('combinations and patterns', () => {
@@ -308,6 +309,16 @@ describe('section and checks', () => {
     ]);
     expect(weights(false)).toEqual([]);
     expect(rowsIn(sheet(true), 'Basis')).toContainEqual(['Own weight', 'Included, 0.084 kN/m in group G']);
+  });
+
+  test('say what the checks take for granted of the section', () => {
+    const section = { ...SECTION, cautions: ['Hold it sideways.'] };
+    const sheet = sheetOf({ input: { section }, result: { section: resolved } });
+    expect(blocksOf(sheet, 'text')).toContainEqual({
+      kind: 'text',
+      tone: 'warning',
+      text: 'Hold it sideways.',
+    });
   });
 
   test('print what fails with its working, what was found, and what is not checked', () => {

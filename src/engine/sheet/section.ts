@@ -12,7 +12,7 @@ export function sectionBlocks({ section, result, ownWeight }: SheetInput, figure
       { kind: 'text', text: `No section is chosen. Deflections are for the template’s usual EI, ${ei}.` },
     ];
   }
-  const { material, computed, table, edition, designation } = section;
+  const { material, computed, table, edition, designation, cautions } = section;
   const { selfWeight, depth, elastic } = result.section;
   const supplied = (column: string): string =>
     computed.includes(column) ? 'computed from the dimensions' : `table, edition ${edition}`;
@@ -61,5 +61,6 @@ export function sectionBlocks({ section, result, ownWeight }: SheetInput, figure
       ],
       rows,
     },
+    ...cautions.map((text): SheetBlock => ({ kind: 'text', tone: 'warning', text })),
   ];
 }

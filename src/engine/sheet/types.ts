@@ -45,6 +45,8 @@ type SheetSection = {
   readonly material: { readonly name: string; readonly e: number; readonly source: string };
   /** Columns of the row that were computed from its dimensions, not supplied. */
   readonly computed: readonly string[];
+  /** What the checks take for granted of such a section. */
+  readonly cautions: readonly string[];
 };
 
 export type SheetCaution = { readonly title: string; readonly text: string; readonly version: number };

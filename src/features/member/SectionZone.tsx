@@ -1,8 +1,10 @@
 import { useState } from 'react';
+import { RichHtml } from '@/components/drawing/marks/RichHtml';
 import { Field } from '@/components/ui/Field';
 import { UtilisationTick } from '@/components/ui/UtilisationTick';
 import { ZoneHeading } from '@/components/ui/ZoneHeading';
 import { formatFor, readQuantity, type UnitSystemName } from '@/engine/quantity';
+import { sectionCautions } from '@/engine/section';
 import type { MaterialChoice } from '@/features/material/choice';
 import type { SectionItem } from '@/features/section/section';
 import { draftSection, type Utilisation } from './candidates';
@@ -53,6 +55,7 @@ export function SectionZone({ section, inputs, materials, system, mayEdit, onPic
       <p role="status" className="text-schedule text-ink-2 empty:hidden">
         {said(found, section)}
       </p>
+      {section && <Cautions {...section.values} system={system} />}
       {items.length > 0 && (
         <table className="schedule entries">
           <thead>
@@ -85,6 +88,18 @@ export function SectionZone({ section, inputs, materials, system, mayEdit, onPic
     </section>
   );
 }
+
+/** What the checks take for granted of the section that is chosen. */
+const Cautions = ({
+  designation,
+  dimensions,
+  system,
+}: Pick<DraftSection['values'], 'designation' | 'dimensions'> & Pick<SectionZoneProps, 'system'>) =>
+  sectionCautions(dimensions, system).map((caution) => (
+    <p key={caution} className="mb-8 text-schedule">
+      <b className="font-semibold text-ochre-ink">{designation}.</b> <RichHtml text={caution} />
+    </p>
+  ));
 
 interface SearchText {
   readonly q: string;

@@ -1,5 +1,7 @@
 import { withPractice } from '@/db/tenancy';
 import { resolveCriteria } from '@/engine/check';
+import type { UnitSystemName } from '@/engine/quantity';
+import { sectionCautions } from '@/engine/section';
 import {
   buildFaultSheet,
   buildSheet,
@@ -68,7 +70,7 @@ function blocksOf(row: MemberRow, pins: Pins, job: JobRow, cautions: readonly Sh
     parameters,
     ownWeight: { acts: settings.self_weight, reason: settings.self_weight_reason },
     patterns: { act: settings.patterns, reason: settings.patterns_reason },
-    section: sectionOf(pins),
+    section: sectionOf(pins, job.unitSystem),
     criteria: criteria &&
       judged && {
         name: criteria.name,
@@ -82,7 +84,7 @@ function blocksOf(row: MemberRow, pins: Pins, job: JobRow, cautions: readonly Sh
   });
 }
 
-function sectionOf({ section }: Pins): SheetInput['section'] {
+function sectionOf({ section }: Pins, system: UnitSystemName): SheetInput['section'] {
   if (!section) return null;
   const { row, material } = section;
   const { standard, clause, fromMemory } = material.source;
@@ -96,5 +98,6 @@ function sectionOf({ section }: Pins): SheetInput['section'] {
       source: `${standard}, ${clause}${fromMemory ? ', from memory' : ''}`,
     },
     computed: row.computed,
+    cautions: sectionCautions(row.values.dimensions, system),
   };
 }

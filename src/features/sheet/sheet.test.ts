@@ -68,6 +68,7 @@ function sheetOf({ slug = SLUG, parameters, system = 'metric', isChecked = false
           edition: 1,
           material: { name: material.name, e: material.e, source: material.source.standard },
           computed: ['i_major_cm4'],
+          cautions: [],
         }
       : null,
     patterns: { act: patterns, reason: 'Stored goods stand on both spans' },

@@ -85,7 +85,7 @@ describe('a designation', () => {
   });
 
   test('with a slip in it brings the nearest', async () => {
-    const { json } = await get({ q: 'w12x27' });
+    const { json } = await get({ q: 'w12x25' });
     expect(json.items.map((item: SectionItem) => item.designation)).toContain('W12x26');
     expect([json.total, json.next]).toEqual([json.items.length, null]);
   });

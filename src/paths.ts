@@ -70,6 +70,7 @@ export const paths = {
   readyz: '/readyz',
   api: {
     me: '/api/v1/me',
+    sectionColumns: '/api/v1/me/section-columns',
     events: '/api/v1/events',
     notices: '/api/v1/notices',
     readNotices: '/api/v1/notices/read',
@@ -95,6 +96,8 @@ export const paths = {
     auditExport: '/api/v1/audit/export',
     sections: '/api/v1/sections',
     sectionSpread: '/api/v1/sections/spread',
+    savedSearches: '/api/v1/sections/searches',
+    savedSearch: (id: string) => `/api/v1/sections/searches/${encodeURIComponent(id)}`,
     section: (table: string, designation: string) =>
       `/api/v1/sections/${encodeURIComponent(table)}/${designationSegment(designation)}`,
     stock: '/api/v1/stock',
@@ -104,8 +107,8 @@ export const paths = {
       `/api/v1/stock/${encodeURIComponent(supplier)}/lines/${encodeURIComponent(id)}`,
     checkStock: (supplier: string) => `/api/v1/stock/${encodeURIComponent(supplier)}/check`,
     stockCsv: (supplier: string) => `/api/v1/stock/${encodeURIComponent(supplier)}/csv`,
-    imports: '/api/v1/imports',
-    import: (id: string) => `/api/v1/imports/${encodeURIComponent(id)}`,
+    imports: '/api/v1/section-imports',
+    import: (id: string) => `/api/v1/section-imports/${encodeURIComponent(id)}`,
     search: '/api/v1/search',
     jobs: '/api/v1/jobs',
     job: (number: string) => `/api/v1/jobs/${encodeURIComponent(number)}`,

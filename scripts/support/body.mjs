@@ -18,7 +18,7 @@ const PROBLEMS = {
 
 /** Whether the body is a file, which is passed on as it comes and never held whole. */
 export const isUpload = ({ method, url }) => UPLOADS.test(`${method} ${url.split('?', 1)[0]}`);
-const UPLOADS = /^(POST \/api\/v1\/imports|PUT \/api\/v1\/imports\/[\w-]+\/source)$/;
+const UPLOADS = /^(POST \/api\/v1\/section-imports|PUT \/api\/v1\/section-imports\/[\w-]+\/source)$/;
 
 export const refusesLength = (request) =>
   Number(request.headers['content-length'] ?? 0) > (isUpload(request) ? MOST_OF_FILE : MOST);

@@ -12,6 +12,8 @@ export interface Operation<B extends z.ZodType = z.ZodType, Q extends z.ZodType 
   readonly description?: string;
   /** Read from the body before the handler runs. Without it the handler reads the body, or there is none. */
   readonly body?: B;
+  /** The media types of the one part, `file`, of the form that the handler takes. */
+  readonly file?: string;
   readonly query?: Q;
   /** What it answers with; described, not enforced. */
   readonly answer?: z.ZodType;

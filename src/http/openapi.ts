@@ -47,6 +47,22 @@ function parametersOf(pattern: string, query: z.ZodType | undefined, id: string)
   return [...inPath, ...inQuery];
 }
 
+/** A form of one file, of the media types that are listed. */
+const formOf = (types: string): Json => ({
+  required: true,
+  content: {
+    'multipart/form-data': {
+      schema: {
+        type: 'object',
+        properties: { file: { type: 'string', format: 'binary' } },
+        required: ['file'],
+        additionalProperties: false,
+      },
+      encoding: { file: { contentType: types } },
+    },
+  },
+});
+
 function describeEndpoint(pattern: string, method: string, { operation, open }: Endpoint): Json {
   const id =
     `${method.toLowerCase()}${pattern.replace('/api/v1', '').replaceAll(/[^A-Za-z0-9]+/g, '-')}`.replace(
@@ -66,6 +82,7 @@ function describeEndpoint(pattern: string, method: string, { operation, open }: 
         ...content('application/json', jsonSchema(operation.body, 'input', `${id}-body`)),
       },
     }),
+    ...(operation.file && { requestBody: formOf(operation.file) }),
     responses: {
       [status]: {
         description: OUTCOMES[status],

@@ -40,8 +40,8 @@ const send = (method: string, path: string, bytes: number) =>
 
 test('a file goes through as it comes, in pieces; any other body of its size is refused', async () => {
   for (const [method, path] of [
-    ['POST', '/api/v1/imports?name=a.csv'],
-    ['PUT', '/api/v1/imports/8db086e3-2478-4a6a-911c-d95a2acb329a/source?name=a.pdf'],
+    ['POST', '/api/v1/section-imports'],
+    ['PUT', '/api/v1/section-imports/8db086e3-2478-4a6a-911c-d95a2acb329a/source'],
   ] as const) {
     const answer = await send(method, path, 20 * MEGABYTE);
     const { length, pieces } = await answer.json();
@@ -49,22 +49,22 @@ test('a file goes through as it comes, in pieces; any other body of its size is 
     expect(pieces).toBeGreaterThan(20);
   }
   for (const [method, path] of [
-    ['POST', '/api/v1/imports/8db086e3-2478-4a6a-911c-d95a2acb329a/fixes'],
-    ['PUT', '/api/v1/imports?name=a.csv'],
+    ['POST', '/api/v1/section-imports/8db086e3-2478-4a6a-911c-d95a2acb329a/fixes'],
+    ['PUT', '/api/v1/section-imports'],
     ['POST', '/api/v1/jobs'],
   ] as const)
     expect((await send(method, path, 2 * MEGABYTE)).status).toBe(413);
 });
 
 test('a file that announces more than 50 MB is refused before it is read', async () => {
-  const answer = await send('POST', '/api/v1/imports?name=a.csv', 52 * MEGABYTE);
+  const answer = await send('POST', '/api/v1/section-imports', 52 * MEGABYTE);
   expect(answer.status).toBe(413);
   expect((await answer.json()).detail).toContain('50 MB');
 });
 
 test('whoever stops reading a file is still heard, and the connection goes on', async () => {
   for (let turn = 0; turn < 3; turn++) {
-    const answer = await send('POST', `/api/v1/imports?most=${MEGABYTE}`, 8 * MEGABYTE);
+    const answer = await send('POST', `/api/v1/section-imports?most=${MEGABYTE}`, 8 * MEGABYTE);
     expect(answer.status).toBe(413);
     expect((await answer.json()).length).toBeLessThan(2 * MEGABYTE);
   }

@@ -13,7 +13,14 @@ export const ABOUT = {
   licence: 'Kept by leave of the works.',
 };
 
-const SLUG = 'api/v1/imports';
+const SLUG = 'api/v1/section-imports';
+
+/** The form that a file is sent as. */
+export function formOf(content: BlobPart, name: string, type: string): FormData {
+  const form = new FormData();
+  form.set('file', new File([content], name, { type }));
+  return form;
+}
 const ATTEMPT = { isLast: true };
 
 /** Acts on imports over the interface as one person, and does the worker's part at once where it is asked for. */
@@ -30,16 +37,13 @@ export function importer(cookie: string, practiceId: string) {
     act,
     work,
     read,
-    upload: (body: BodyInit, name = 'table.csv', type = 'text/csv') =>
-      ask('POST', `/${SLUG}?name=${encodeURIComponent(name)}`, {
-        cookie,
-        body,
-        headers: { 'content-type': type },
-      }),
+    upload: (content: BlobPart, name = 'table.csv', type = 'text/csv') =>
+      ask('POST', `/${SLUG}`, { cookie, body: formOf(content, name, type) }),
     /** Says what the file is, and checks it. */
     check: async (id: string, answers: readonly object[], about: object = {}) => {
       const { version } = await read(id);
-      const mapped = await act('PUT', id, '/mapping', { about: { ...ABOUT, ...about }, answers }, version);
+      const said = { about: { ...ABOUT, ...about }, answers, check: false };
+      const mapped = await act('PUT', id, '/mapping', said, version);
       const asked = await act('POST', id, '/check', undefined, mapped.json.version);
       if (asked.status === 202) await work(id);
       return asked.status === 202 ? { ...asked, json: await read(id) } : asked;

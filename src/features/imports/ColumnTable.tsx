@@ -1,23 +1,18 @@
-import type {
-  Answer,
-  Field,
-  MappedColumn,
-  Mapping,
-  RecognisedColumn,
-} from '@/features/section/import/contract';
+import type { Answer, Field, MappedColumn, Mapping } from '@/features/section/import/contract';
 import { FIELD_NAMES, FIELDS, unitsOf, unitWords } from './fields';
+import type { ImportView } from './imports';
 
 interface ColumnTableProps {
   readonly mapping: Mapping;
-  readonly recognised: readonly RecognisedColumn[];
-  readonly preview: readonly (readonly string[])[];
+  readonly view: Pick<ImportView, 'columns' | 'guesses' | 'recognised'>;
   readonly isFixed: boolean;
   readonly onAnswer: (answer: Answer) => void;
 }
 
 /** Each column of the file: its first cells, what it goes to, in which unit it is, and what its first row reads then. */
-export function ColumnTable({ mapping, recognised, preview, isFixed, onAnswer }: ColumnTableProps) {
-  const byIndex = new Map(recognised.map((one) => [one.index, one]));
+export function ColumnTable({ mapping, view, isFixed, onAnswer }: ColumnTableProps) {
+  const samples = new Map(view.columns.map((one) => [one.index, one.samples]));
+  const guesses = new Map(view.guesses.map((one) => [one.column, one]));
   return (
     <table className="schedule import-columns">
       <thead>
@@ -41,8 +36,9 @@ export function ColumnTable({ mapping, recognised, preview, isFixed, onAnswer }:
           <ColumnRow
             key={column.index}
             column={column}
-            recognised={byIndex.get(column.index)}
-            reads={preview[0]?.[column.index]}
+            samples={samples.get(column.index) ?? []}
+            guess={guesses.get(column.index)}
+            reads={view.recognised.preview[0]?.[column.index]}
             isFixed={isFixed}
             onAnswer={onAnswer}
           />
@@ -54,24 +50,25 @@ export function ColumnTable({ mapping, recognised, preview, isFixed, onAnswer }:
 
 interface RowProps {
   readonly column: MappedColumn;
-  readonly recognised: RecognisedColumn | undefined;
+  readonly samples: readonly string[];
+  readonly guess: ImportView['guesses'][number] | undefined;
   readonly reads: string | undefined;
   readonly isFixed: boolean;
   readonly onAnswer: (answer: Answer) => void;
 }
 
-function ColumnRow({ column, recognised, reads, isFixed, onAnswer }: RowProps) {
+function ColumnRow({ column, samples, guess, reads, isFixed, onAnswer }: RowProps) {
   const { index, heading, field, unit } = column;
   const isNumber = field !== null && FIELDS[field].quantity !== null;
   const isAsked = isNumber && unit === null;
   // What a heading means by the axes is asked for in words.
-  const isUnsure = field !== null && !column.byAxes && recognised?.confidence === 'unsure';
+  const isUnsure = field !== null && !column.byAxes && guess?.confidence === 'unsure';
   return (
-    <tr data-left-out={field === null || undefined} title={recognised?.reason}>
+    <tr data-left-out={field === null || undefined} title={guess?.reason}>
       <th scope="row">{heading || `Column ${index + 1}`}</th>
       {[0, 1, 2].map((place) => (
         <td key={place} className="raw figure">
-          {recognised?.samples[place] ?? ''}
+          {samples[place] ?? ''}
         </td>
       ))}
       <td className="arrow">
@@ -102,7 +99,7 @@ function ColumnRow({ column, recognised, reads, isFixed, onAnswer }: RowProps) {
           ? '–'
           : isAsked
             ? 'unit not said'
-            : `${reads ?? recognised?.samples[0] ?? ''} ${unit ? unitWords(unit) : ''}`}
+            : `${reads ?? samples[0] ?? ''} ${unit ? unitWords(unit) : ''}`}
       </td>
     </tr>
   );

@@ -50,7 +50,7 @@ function useSaid({ view, act }: ReturnType<typeof useImport>, reference: string)
     answers.length > 0 || JSON.stringify(about) !== JSON.stringify(draftOf(view.about, reference));
 
   async function keep(said: readonly Answer[]) {
-    const kept = await importApi.map(id, version, { about, answers: [...said] });
+    const kept = await importApi.map(id, version, { about, answers: [...said], check: false });
     if (kept.kind === 'done') setAnswers([]);
     return kept;
   }
@@ -76,10 +76,10 @@ export function ImportWorkspace({ practice, first, tables, reference }: ImportWo
   const found = useImport(first);
   const { view, isBusy, problem, act, underWay } = found;
   const { mapping, about, setAbout, hasNews, say, check } = useSaid(found, reference);
-  const { id, version, state, recognised } = view;
+  const { id, version, state } = view;
   const isEditable = view.may_act && !underWay && !isBusy && EDITABLE.includes(state);
   const fix = (fixes: Parameters<typeof importApi.fix>[2]) => act(() => importApi.fix(id, version, fixes));
-  const cancel = () => act(() => importApi.cancel(id));
+  const cancel = () => act(() => importApi.cancel(id, version));
   return (
     <>
       <ImportHead {...{ view, problem, mapping }} />
@@ -89,13 +89,7 @@ export function ImportWorkspace({ practice, first, tables, reference }: ImportWo
             Columns
           </ZoneHeading>
           <div className="overflow-x-auto">
-            <ColumnTable
-              mapping={mapping}
-              recognised={recognised.columns}
-              preview={recognised.preview}
-              isFixed={!isEditable}
-              onAnswer={say}
-            />
+            <ColumnTable mapping={mapping} view={view} isFixed={!isEditable} onAnswer={say} />
           </div>
         </section>
         <FindingZone

@@ -13,7 +13,7 @@ interface KeptProps {
 
 /** The files that lie beside the table, and what was put right in it. */
 export function Kept({ view, isEditable, act }: KeptProps) {
-  const { id, file, source_document: source, fixes } = view;
+  const { id, version, file, source_document: source, fixes } = view;
   const here = paths.api.import(id);
   return (
     <div className="mt-14 grid gap-x-20 gap-y-14 border-t border-rule pt-10 md:grid-cols-2">
@@ -44,7 +44,10 @@ export function Kept({ view, isEditable, act }: KeptProps) {
           </p>
         )}
         {isEditable && (
-          <BringSource {...{ id, act }} word={source ? 'Bring another' : 'Bring a PDF or a picture'} />
+          <BringSource
+            {...{ id, version, act }}
+            word={source ? 'Bring another' : 'Bring a PDF or a picture'}
+          />
         )}
       </div>
       {fixes.length > 0 && (
@@ -72,16 +75,18 @@ export function Kept({ view, isEditable, act }: KeptProps) {
 
 interface BringSourceProps extends Pick<KeptProps, 'act'> {
   readonly id: string;
+  readonly version: number;
   readonly word: string;
 }
 
-function BringSource({ id, word, act }: BringSourceProps) {
+function BringSource({ id, version, word, act }: BringSourceProps) {
   const pick = useRef<HTMLInputElement>(null);
   const [share, setShare] = useState<number | null>(null);
   async function bring(file: File | undefined) {
     if (!file) return;
     setShare(0);
-    await act(() => uploadSource(id, file, { onProgress: setShare, signal: new AbortController().signal }));
+    const { signal } = new AbortController();
+    await act(() => uploadSource(id, version, file, { onProgress: setShare, signal }));
     setShare(null);
   }
   return (

@@ -12,7 +12,7 @@ import { createDraft } from '@/features/review/review.server';
 import { type Actor, findDocument } from '@/features/review/rows.server';
 import { answer, applyFix, mayAccept, openQuestions } from '@/features/section/import';
 import type { Finding } from '@/features/section/import/contract';
-import { AppError, type Fault, invalid, stale } from '@/lib/app-error';
+import { AppError, type Fault, invalid } from '@/lib/app-error';
 import { read } from '@/lib/read';
 import { publish } from '@/services/events';
 import { send } from '@/services/queue';
@@ -32,7 +32,7 @@ import {
 import {
   acceptancesOf,
   findImport,
-  holdImport,
+  holdVersion,
   type ImportRow,
   linesOf,
   ofImport,
@@ -87,14 +87,12 @@ export function listImports(
 function act(
   actor: Actor,
   id: string,
-  version: number | null,
+  version: number,
   work: (tx: Tx, row: ImportRow) => Promise<void>,
 ): Promise<ImportView> {
   requirePermission(actor, 'library.import');
   return withPractice(actor, async (tx) => {
-    const row = await holdImport(tx, actor.practiceId, id);
-    if (version !== null && row.version !== version) throw stale(await toView(tx, actor, id));
-    await work(tx, row);
+    await work(tx, await holdVersion(tx, actor, id, version));
     return toView(tx, actor, id);
   });
 }
@@ -110,25 +108,30 @@ const change = (tx: Tx, row: ImportRow, set: Change) =>
 const record = (tx: Tx, actor: Actor, row: ImportRow, action: string, after?: unknown) =>
   recordAudit(tx, actor, { action: `import.${action}`, subjectKind: 'import', subjectId: row.id, after });
 
-/** Keeps what the librarian says of the table and of its columns. What was put right in cells stays. */
-export const saveMapping = (actor: Actor, id: string, version: number, { about, answers }: SaveMapping) =>
+/**
+ * Keeps what the librarian says of the table and of its columns, and begins the check where that is wanted and nothing
+ * is left to be said. What was put right in cells stays.
+ */
+export const saveMapping = (actor: Actor, id: string, version: number, said: SaveMapping) =>
   act(actor, id, version, async (tx, row) => {
     requireState(row);
+    const { answers, about = row.about } = said;
     // Headings may read otherwise in another encoding, and with them everything that follows from them.
     const encoding = answers.findLast((one) => one.kind === 'encoding');
     const reread = encoding ? await recogniseAs(row, encoding.value) : null;
     const mapping = answers.reduce(answer, reread?.mapping ?? row.mapping);
+    const next = { about, mapping, version: row.version + 1 };
     await change(tx, row, {
       ...(reread && { recognition: { ...reread, remembered: null } }),
+      ...next,
       state: 'mapping',
-      about,
-      mapping,
       facts: null,
       report: null,
       error: null,
-      version: row.version + 1,
     });
     await record(tx, actor, row, 'map', { about, mapping });
+    const mapped = { ...row, ...next };
+    if (said.check && (await unsaid(tx, mapped)).length === 0) await startCheck(tx, actor, mapped);
   });
 
 /** Of a table that is not there yet: whether its reference is free. */
@@ -145,22 +148,26 @@ const NOBODY = { id: '00000000-0000-0000-0000-000000000000' };
 export const askCheck = (actor: Actor, id: string, version: number) =>
   act(actor, id, version, async (tx, row) => {
     requireState(row);
-    await requireSaid(tx, row);
-    await beginCheck(tx, row, {});
-    await record(tx, actor, row, 'check', { version: row.version });
+    const faults = await unsaid(tx, row);
+    if (faults.length > 0) throw invalid(faults);
+    await startCheck(tx, actor, row);
   });
 
-async function requireSaid(tx: Tx, row: ImportRow): Promise<void> {
-  const open = openQuestions(row.mapping);
-  const questions: Fault[] = open.map((kind) => ({
+async function startCheck(tx: Tx, actor: Actor, row: ImportRow): Promise<void> {
+  await beginCheck(tx, row, {});
+  await record(tx, actor, row, 'check', { version: row.version });
+}
+
+/** What has to be said before the file can be checked. */
+async function unsaid(tx: Tx, row: ImportRow): Promise<Fault[]> {
+  const questions = openQuestions(row.mapping).map((kind) => ({
     pointer: `/mapping/${kind}`,
     code: 'required',
     message: QUESTIONS[kind],
   }));
   const reading = read(About, row.about);
   const about = reading.ok ? await tableFaults(tx, row.practiceId, reading.value) : reading.faults;
-  const faults = [...questions, ...about.map((fault) => ({ ...fault, pointer: `/about${fault.pointer}` }))];
-  if (faults.length > 0) throw invalid(faults);
+  return [...questions, ...about.map((fault) => ({ ...fault, pointer: `/about${fault.pointer}` }))];
 }
 
 const QUESTIONS: Readonly<Record<ReturnType<typeof openQuestions>[number], string>> = {
@@ -272,8 +279,8 @@ export const acceptFindings = (actor: Actor, id: string, version: number, { keys
   });
 
 /** Ends an import. What it wrote into a draft goes; the file and the record of it stay. */
-export const cancelImport = (actor: Actor, id: string) =>
-  act(actor, id, null, async (tx, row) => {
+export const cancelImport = (actor: Actor, id: string, version: number) =>
+  act(actor, id, version, async (tx, row) => {
     requireState(row, ['mapping', 'checking', 'findings', 'failed', 'committing']);
     await dropDraft(tx, row);
     await change(tx, row, { state: 'cancelled', phase: null, finishedAt: new Date() });

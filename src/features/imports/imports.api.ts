@@ -65,7 +65,7 @@ export const importApi = {
     ask('POST', `${paths.api.import(id)}/accept`, version, body),
   commit: (id: string, version: number, body: Commit) =>
     ask('POST', `${paths.api.import(id)}/commit`, version, body),
-  cancel: (id: string) => ask('POST', `${paths.api.import(id)}/cancel`, null),
+  cancel: (id: string, version: number) => ask('POST', `${paths.api.import(id)}/cancel`, version),
 };
 
 /** Null where the server does not answer now. */
@@ -74,30 +74,30 @@ export async function readProgress(id: string): Promise<ImportProgress | null> {
   return response?.ok ? response.json() : null;
 }
 
-/** A file's type as browsers say it; some know none for a CSV file. */
-const typeOf = ({ type, name }: File): string =>
-  type || (/\.pdf$/i.test(name) ? 'application/pdf' : 'text/csv');
-
 interface Sending {
   readonly method: 'POST' | 'PUT';
   readonly url: string;
+  /** Of the import that it belongs to; none of a new one. */
+  readonly version?: number;
   readonly onProgress: (share: number) => void;
   readonly signal: AbortSignal;
 }
 
-/** Sends a file as it is. Only this older interface of browsers tells how much has gone. */
-function sendFile(file: File, { method, url, onProgress, signal }: Sending): Promise<Acted> {
+/** Sends a file as a form. Only this older interface of browsers tells how much has gone. */
+function sendFile(file: File, { method, url, version, onProgress, signal }: Sending): Promise<Acted> {
   return new Promise((resolve) => {
     const request = new XMLHttpRequest();
-    request.open(method, `${url}?name=${encodeURIComponent(file.name)}`);
-    request.setRequestHeader('Content-Type', typeOf(file));
+    request.open(method, url);
+    if (version !== undefined) request.setRequestHeader('If-Match', `"${version}"`);
     request.responseType = 'json';
     request.upload.onprogress = ({ loaded, total }) => onProgress(total > 0 ? loaded / total : 1);
     request.onload = () => resolve(toActed(request.status, request.response));
     request.onerror = () => resolve(refused('The file did not get through. Try again.'));
     request.onabort = () => resolve(refused('The upload was stopped. Nothing was kept.'));
     signal.addEventListener('abort', () => request.abort());
-    request.send(file);
+    const form = new FormData();
+    form.set('file', file);
+    request.send(form);
   });
 }
 
@@ -106,5 +106,5 @@ type Watch = Pick<Sending, 'onProgress' | 'signal'>;
 export const uploadTable = (file: File, watch: Watch) =>
   sendFile(file, { method: 'POST', url: paths.api.imports, ...watch });
 
-export const uploadSource = (id: string, file: File, watch: Watch) =>
-  sendFile(file, { method: 'PUT', url: `${paths.api.import(id)}/source`, ...watch });
+export const uploadSource = (id: string, version: number, file: File, watch: Watch) =>
+  sendFile(file, { method: 'PUT', url: `${paths.api.import(id)}/source`, version, ...watch });

@@ -11,7 +11,6 @@ import type {
   Mapping,
   MappingEdit,
   Question,
-  RecognisedColumn,
   Recognition,
   Report,
 } from '@/features/section/import/contract';
@@ -97,7 +96,16 @@ const AboutSoFar = z.strictObject(
 );
 
 /** PUT …/mapping: answers are put on what was recognised and said before, in order. */
-export const SaveMapping = z.strictObject({ about: AboutSoFar, answers: z.array(AnswerBody).max(500) });
+export const SaveMapping = z.strictObject({
+  about: AboutSoFar.optional().describe(
+    'Which table it is, and where its values are from; left out, it stays',
+  ),
+  answers: z.array(AnswerBody).max(500).default([]).describe('Where the guesses are wrong, or leave it open'),
+  check: z
+    .boolean()
+    .default(true)
+    .describe('Whether the check begins at once, where nothing is left to be said'),
+});
 export type SaveMapping = z.output<typeof SaveMapping>;
 
 /** POST …/fixes: fixes that the report offers, or a cell as a person types it, or rows that are left out. */
@@ -134,8 +142,6 @@ export const Commit = z.strictObject({
 });
 export type Commit = z.output<typeof Commit>;
 
-export const UploadQuery = z.strictObject({ name: z.string().trim().min(1).max(255) });
-
 const as = <T>() => z.custom<T>(() => true);
 
 /** An import in a list. */
@@ -153,12 +159,25 @@ const line = {
 export const ImportLine = z.strictObject(line);
 export type ImportLine = z.output<typeof ImportLine>;
 
+const Guess = z.strictObject({
+  column: z.int().describe('Its index'),
+  field: field.nullable().describe('The property that it holds; null: none, or open'),
+  unit: z.string().nullable(),
+  factor: z.number().describe('Stands beside the unit: 1000 of 10³ cm⁶'),
+  confidence: z.enum(['certain', 'likely', 'unsure']),
+  reason: z.string(),
+  open: z.array(z.enum(['axes', 'unit'])).describe('What of it only a person can say'),
+});
+
 export const ImportView = z.strictObject({
   ...line,
   version: z.int(),
+  columns: z
+    .array(z.strictObject({ index: z.int(), heading: z.string(), samples: z.array(z.string()) }))
+    .describe('As they stand in the file, with their first cells'),
+  guesses: z.array(Guess).describe('What each column is proposed to be'),
   source_document: z.strictObject({ name: z.string(), sha256: z.string() }).nullable(),
   recognised: z.strictObject({
-    columns: as<RecognisedColumn[]>(),
     questions: as<Question[]>().describe('What only a person can say'),
     language: z.string().nullable(),
     bom: z.boolean(),
@@ -167,7 +186,7 @@ export const ImportView = z.strictObject({
     delimiter: as<Delimiter>(),
     remembered: z.strictObject({ supplier: z.string(), at: z.string() }).nullable(),
   }),
-  mapping: as<Mapping>(),
+  mapping: as<Mapping>().describe('How the file is read: the guesses, with what was answered put on them'),
   /** Kinds of question that nobody has answered. */
   open_questions: z.array(z.string()),
   about: AboutSoFar,

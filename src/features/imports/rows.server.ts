@@ -7,7 +7,8 @@ import { may, requirePermission } from '@/features/account/permission';
 import type { Actor } from '@/features/review/rows.server';
 import { openCount, openQuestions } from '@/features/section/import';
 import type { Acceptance, Edit, FileFacts, Mapping } from '@/features/section/import/contract';
-import { AppError, notFound } from '@/lib/app-error';
+import { AppError, notFound, stale } from '@/lib/app-error';
+import { guessesOf } from './guesses';
 import type { CheckedReport, FixRecord, ImportLine, ImportView, Recognised } from './imports';
 import { type ImportState, OPEN, UNDER_WAY } from './state';
 
@@ -49,10 +50,17 @@ export async function findImport(tx: Tx, practiceId: string, id: string): Promis
 }
 
 /** The same, held for this transaction; of two people who act at once one waits. */
-export async function holdImport(tx: Tx, practiceId: string, id: string): Promise<ImportRow> {
+async function holdImport(tx: Tx, practiceId: string, id: string): Promise<ImportRow> {
   const [found] = await tx.select().from(sectionImport).where(ofImport(practiceId, id)).for('update');
   if (!found) throw notFound('This import');
   return toRow(found);
+}
+
+/** The same as it was read, or 412 with what it is by now. */
+export async function holdVersion(tx: Tx, actor: Actor, id: string, version: number): Promise<ImportRow> {
+  const row = await holdImport(tx, actor.practiceId, id);
+  if (row.version !== version) throw stale(await toView(tx, actor, id));
+  return row;
 }
 
 /** The same for a worker: null where another one holds it. */
@@ -174,28 +182,20 @@ export async function toView(tx: Tx, actor: Actor, id: string): Promise<ImportVi
   if (!line) throw notFound('This import');
   const acceptances = await acceptancesOf(tx, row);
   const { recognised, report, sourceName, sourceSha256 } = row;
-  const {
-    mapping: proposed,
-    columns,
-    questions,
-    language,
-    bom,
-    thousandsMarks,
-    preview,
-    remembered,
-  } = recognised;
+  const { questions, language, bom, thousandsMarks, preview, remembered } = recognised;
   return {
     ...toLine(line),
     version: row.version,
     source_document: sourceName && sourceSha256 ? { name: sourceName, sha256: sourceSha256 } : null,
+    columns: recognised.columns.map(({ index, heading, samples }) => ({ index, heading, samples })),
+    guesses: guessesOf(recognised),
     recognised: {
-      columns,
       questions,
       language,
       bom,
       thousands_marks: thousandsMarks,
       preview,
-      delimiter: proposed.delimiter,
+      delimiter: recognised.mapping.delimiter,
       remembered,
     },
     mapping: row.mapping,

@@ -7,7 +7,7 @@ import { withPractice } from '@/db/tenancy';
 import { requirePermission } from '@/features/account/permission';
 import { recordAudit } from '@/features/audit/audit.server';
 import type { Actor } from '@/features/review/rows.server';
-import { recognise, remember } from '@/features/section/import';
+import { recognise, remember, Screening } from '@/features/section/import';
 import {
   type Encoding,
   type Mapping,
@@ -20,14 +20,13 @@ import { contentHash } from '@/lib/fingerprint';
 import { log } from '@/lib/log';
 import { requireStore } from '@/services/store';
 import type { About, ImportView, Recognised } from './imports';
-import { holdImport, type ImportRow, ofImport, requireState, toView } from './rows.server';
+import { holdVersion, type ImportRow, ofImport, requireState, toView } from './rows.server';
 
+/** A file as it comes. */
 export interface Upload {
   readonly name: string;
   readonly type: string;
-  /** As announced; the stream itself is what counts. */
-  readonly length: number | null;
-  readonly body: AsyncIterable<Uint8Array> | null;
+  readonly body: AsyncIterable<Uint8Array>;
 }
 
 /** What browsers call a CSV file; the last two say nothing. */
@@ -43,22 +42,19 @@ const TABLE_TYPES = [
 const SOURCE_TYPES = ['application/pdf', 'image/png', 'image/jpeg', 'text/plain', 'text/csv'];
 
 /**
- * Takes a file in: it goes into the store as it comes, and is recognised by its beginning. Of a file that is refused
- * nothing is kept.
+ * Takes a file in: it goes into the store as it comes, and is looked through to its end on the way. Of a file that is
+ * refused nothing is kept.
  */
 export async function takeUpload(actor: Actor, upload: Upload): Promise<ImportView> {
   requirePermission(actor, 'library.import');
   requireType(upload.type, TABLE_TYPES, 'a table as text: CSV, semicolon or tab separated');
   const id = crypto.randomUUID();
   const key = `${actor.practiceId}/imports/${id}`;
-  const file = { name: fileName(upload.name), size: upload.length ?? MOST_BYTES };
-  const refuse = (head: Uint8Array) => {
-    const reading = recognise(head, file);
-    if (!reading.ok) throw refused(reading.refusal);
-  };
-  const kept = await keep(key, upload, refuse);
+  const name = fileName(upload.name);
+  const screening = new Screening(name);
+  const kept = await keep(key, upload, (piece) => screening.push(piece));
   try {
-    const reading = recognise(kept.head, { ...file, size: kept.bytes });
+    const reading = screening.finish();
     if (!reading.ok) throw refused(reading.refusal);
     return await withPractice(actor, async (tx) => {
       const { recognised, about } = await withMemory(tx, actor.practiceId, reading);
@@ -66,7 +62,7 @@ export async function takeUpload(actor: Actor, upload: Upload): Promise<ImportVi
         practiceId: actor.practiceId,
         id,
         fileKey: key,
-        fileName: file.name,
+        fileName: name,
         bytes: kept.bytes,
         sha256: kept.sha256,
         recognition: recognised,
@@ -77,7 +73,7 @@ export async function takeUpload(actor: Actor, upload: Upload): Promise<ImportVi
         action: 'import.upload',
         subjectKind: 'import',
         subjectId: id,
-        after: { file: file.name, bytes: kept.bytes, sha256: kept.sha256 },
+        after: { file: name, bytes: kept.bytes, sha256: kept.sha256 },
       });
       return toView(tx, actor, id);
     });
@@ -88,15 +84,20 @@ export async function takeUpload(actor: Actor, upload: Upload): Promise<ImportVi
 }
 
 /** Takes in the document that the values are from, to lie beside the table. */
-export async function takeSource(actor: Actor, id: string, upload: Upload): Promise<ImportView> {
+export async function takeSource(
+  actor: Actor,
+  id: string,
+  version: number,
+  upload: Upload,
+): Promise<ImportView> {
   requirePermission(actor, 'library.import');
   requireType(upload.type, SOURCE_TYPES, 'a PDF, a picture or a text');
-  await withPractice(actor, async (tx) => requireState(await holdImport(tx, actor.practiceId, id)));
+  await withPractice(actor, async (tx) => requireState(await holdVersion(tx, actor, id, version)));
   const key = `${actor.practiceId}/sources/${crypto.randomUUID()}`;
-  const { sha256 } = await keep(key, upload, () => undefined);
+  const { sha256 } = await keep(key, upload, () => null);
   try {
     return await withPractice(actor, async (tx) => {
-      requireState(await holdImport(tx, actor.practiceId, id));
+      requireState(await holdVersion(tx, actor, id, version));
       const name = fileName(upload.name);
       await tx
         .update(sectionImport)
@@ -119,12 +120,14 @@ export async function takeSource(actor: Actor, id: string, upload: Upload): Prom
 function requireType(given: string, types: readonly string[], words: string): void {
   const type = given.split(';', 1)[0]?.trim().toLowerCase() ?? '';
   if (types.includes(type)) return;
-  throw new AppError('unsupported_media_type', `This is “${type}”. Bring ${words}.`, {
-    headers: { Accept: types.filter(Boolean).join(', ') },
-  });
+  const message = `This is “${type}”. Bring ${words}.`;
+  throw new AppError('unsupported_media_type', message, { faults: [{ ...OF_FILE, code: 'type', message }] });
 }
 
-const refused = ({ code, message }: Refusal): AppError => invalid([{ pointer: '', code, message }]);
+/** The part of the form that the file is. */
+const OF_FILE = { pointer: '/file' } as const;
+
+const refused = (refusal: Refusal): AppError => invalid([{ ...OF_FILE, ...refusal }]);
 
 const tooLarge = () =>
   new AppError('too_large', 'The file is larger than 50 MB. Split the table, or leave columns out.');
@@ -136,35 +139,32 @@ const fileName = (given: string): string =>
 interface Kept {
   readonly bytes: number;
   readonly sha256: string;
-  /** The beginning of the file, or all of it. */
-  readonly head: Uint8Array;
 }
 
-/** Puts a stream into the store, counting and hashing on the way. `refuse` looks at the beginning as soon as it is there. */
+/** Puts a stream into the store, counting and hashing on the way, until `screen` refuses a piece of it. */
 async function keep(
   key: string,
-  { length, body }: Upload,
-  refuse: (head: Uint8Array) => void,
+  { body }: Upload,
+  screen: (piece: Uint8Array) => Refusal | null,
 ): Promise<Kept> {
-  const store = requireStore();
-  if (length !== null && length > MOST_BYTES) throw tooLarge();
-  if (!body) throw refused({ code: 'empty', message: 'The file is empty. Choose the file again.' });
   const hash = createHash('sha256');
-  const head: Uint8Array[] = [];
   let bytes = 0;
-  async function* measured(chunks: AsyncIterable<Uint8Array>) {
-    for await (const chunk of chunks) {
-      const hadHead = bytes >= RECOGNISED_BYTES;
-      bytes += chunk.byteLength;
+  async function* measured() {
+    for await (const piece of body) {
+      bytes += piece.byteLength;
       if (bytes > MOST_BYTES) throw tooLarge();
-      hash.update(chunk);
-      if (!hadHead) head.push(chunk);
-      if (!hadHead && bytes >= RECOGNISED_BYTES) refuse(headOf(head));
-      yield chunk;
+      hash.update(piece);
+      const refusal = screen(piece);
+      if (refusal) throw refused(refusal);
+      yield piece;
     }
   }
-  await store.put(key, Readable.from(measured(body), { objectMode: false }), 'application/octet-stream');
-  return { bytes, sha256: hash.digest('hex'), head: headOf(head) };
+  await requireStore().put(key, Readable.from(measured(), { objectMode: false }), 'application/octet-stream');
+  if (bytes === 0) {
+    await drop(key);
+    throw refused({ code: 'empty', message: 'The file is empty. Choose the file again.' });
+  }
+  return { bytes, sha256: hash.digest('hex') };
 }
 
 const headOf = (chunks: readonly Uint8Array[]): Uint8Array =>
@@ -184,7 +184,7 @@ export async function recogniseAs(
     if (bytes >= RECOGNISED_BYTES) break;
   }
   const reading = recognise(headOf(chunks), { name: row.fileName, size: row.bytes, encoding });
-  if (!reading.ok) throw refused(reading.refusal);
+  if (!reading.ok) throw invalid([{ pointer: '/answers', ...reading.refusal }]);
   return reading;
 }
 

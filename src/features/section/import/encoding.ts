@@ -75,7 +75,8 @@ export type EncodingReading =
   | { kind: 'open'; choices: Encoding[] }
   | { kind: 'refused'; refusal: Refusal };
 
-const FEW_NULLS = 0.02; // of the bytes: UTF-16 of Latin letters has half of them
+/** Of the bytes; UTF-16 of Latin letters has half of them. */
+export const BINARY_SHARE = 0.02;
 
 /** UTF-16 without a mark: every other byte of Latin text is 0. */
 function wideEncoding(head: Uint8Array): Encoding[] | null {
@@ -91,10 +92,11 @@ function wideEncoding(head: Uint8Array): Encoding[] | null {
   return even > 0.3 * half && odd < 0.05 * half ? ['utf-16be', 'utf-16le'] : null;
 }
 
-function isBinary(head: Uint8Array): boolean {
-  let odd = 0;
-  for (const byte of head) if (byte < 32 && byte !== 9 && byte !== 10 && byte !== 13) odd++;
-  return odd > FEW_NULLS * head.length;
+/** How many control bytes there are that no text has. */
+export function binaryBytes(bytes: Uint8Array): number {
+  let count = 0;
+  for (const byte of bytes) if (byte < 32 && byte !== 9 && byte !== 10 && byte !== 13) count++;
+  return count;
 }
 
 /** UTF-8 up to the last whole character of what was cut off. */
@@ -124,7 +126,7 @@ export function encodingOf(head: Uint8Array, isWhole: boolean): EncodingReading 
   if (startsWith(head, [0xfe, 0xff])) return { kind: 'known', encoding: 'utf-16be', bom: true };
   const wide = wideEncoding(head);
   if (wide) return { kind: 'open', choices: wide };
-  if (isBinary(head)) {
+  if (binaryBytes(head) > BINARY_SHARE * head.length) {
     return { kind: 'refused', refusal: refuse('binary', 'This is no text. Give the table as CSV.') };
   }
   if (isUtf8(head, isWhole)) return { kind: 'known', encoding: 'utf-8', bom: false };

@@ -6,4 +6,5 @@ export { recognise } from './recognise';
 export { addFindings, emptyReport, mayAccept, openCount, reportOf } from './report';
 export { RowCheck } from './row-check';
 export { RULES } from './rules';
+export { Screening } from './screening';
 export { Survey } from './survey';

@@ -13,7 +13,11 @@ import { RowStore } from './row-store';
 import { findSeries } from './series';
 import type { FileLine } from './stream';
 
-const MOST_ROWS = 300_000;
+export const MOST_ROWS = 300_000;
+export const TOO_MANY_ROWS: Refusal = {
+  code: 'too_many_rows',
+  message: `The file has more than ${MOST_ROWS} rows. Split it.`,
+};
 /** Findings of one group that are listed; the others are counted. */
 const LISTED = 200;
 
@@ -68,10 +72,7 @@ export class Survey implements SurveyReading {
       return;
     }
     for (const line of lines) this.add(line);
-    if (this.store.count > MOST_ROWS) {
-      const message = `The file has more than ${MOST_ROWS} rows. Split it.`;
-      this.refusal = { code: 'too_many_rows', message };
-    }
+    if (this.store.count > MOST_ROWS) this.refusal = TOO_MANY_ROWS;
   }
 
   private add(line: FileLine): void {

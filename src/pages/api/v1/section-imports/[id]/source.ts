@@ -1,10 +1,10 @@
 import { openFile } from '@/features/imports/file.server';
-import { ImportView, UploadQuery } from '@/features/imports/imports';
+import { ImportView } from '@/features/imports/imports';
 import { takeSource } from '@/features/imports/upload.server';
 import { answer, endpoint } from '@/http/endpoint';
-import { etag } from '@/http/etag';
+import { etag, ifMatch } from '@/http/etag';
 import { idParam } from '@/http/params';
-import { download, uploadOf } from '@/http/upload';
+import { download, takeFile } from '@/http/upload';
 
 export const GET = endpoint(
   { summary: 'The document that an import’s values are from', status: 200 },
@@ -15,14 +15,15 @@ export const GET = endpoint(
 export const PUT = endpoint(
   {
     summary: 'Brings the document that the values are from',
-    description: 'The body is the file itself: a PDF, a picture or a text, 50 MB at most.',
-    query: UploadQuery,
+    description: 'A form of one part, `file`: a PDF, a picture or a text, 50 MB at most. Needs If-Match.',
+    file: 'application/pdf, image/png, image/jpeg, text/plain, text/csv',
     answer: ImportView,
     status: 200,
   },
-  async (context, { user, query }) => {
+  async (context, { user }) => {
     const id = idParam(context.params, 'id', 'This import');
-    const view = await takeSource(user, id, uploadOf(context, query.name));
+    const version = ifMatch(context);
+    const view = await takeFile(context, (file) => takeSource(user, id, version, file));
     return answer(view, { headers: { ETag: etag(view.version) } });
   },
 );

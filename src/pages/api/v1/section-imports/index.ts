@@ -1,11 +1,11 @@
 import { z } from 'zod';
 import { listImports } from '@/features/imports/act.server';
-import { ImportLine, ImportView, UploadQuery } from '@/features/imports/imports';
+import { ImportLine, ImportView } from '@/features/imports/imports';
 import { takeUpload } from '@/features/imports/upload.server';
 import { answer, endpoint } from '@/http/endpoint';
 import { etag } from '@/http/etag';
 import { listOf, listQuery, readCursor, writeCursor } from '@/http/list';
-import { uploadOf } from '@/http/upload';
+import { takeFile } from '@/http/upload';
 import { paths } from '@/paths';
 
 export const GET = endpoint(
@@ -25,13 +25,13 @@ export const POST = endpoint(
   {
     summary: 'Brings the file of a section table, which is recognised',
     description:
-      'The body is the file itself, 50 MB at most, as text/csv or another type of text. What is refused leaves nothing behind.',
-    query: UploadQuery,
+      'A form of one part, `file`: a table as text, 50 MB at most, read as it comes. `columns` are those of the file, `guesses` what each is proposed to be. The file is looked through to its end; what is refused leaves nothing behind.',
+    file: 'text/csv, text/plain, text/tab-separated-values',
     answer: ImportView,
     status: 201,
   },
-  async (context, { user, query }) => {
-    const view = await takeUpload(user, uploadOf(context, query.name));
+  async (context, { user }) => {
+    const view = await takeFile(context, (file) => takeUpload(user, file));
     return answer(view, {
       status: 201,
       headers: { Location: paths.api.import(view.id), ETag: etag(view.version) },

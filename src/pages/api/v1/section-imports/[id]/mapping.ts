@@ -7,6 +7,8 @@ import { idParam } from '@/http/params';
 export const PUT = endpoint(
   {
     summary: 'Says which table it is and what its columns are',
+    description:
+      'The answers are put on the guesses and on what was said before. Where nothing is left to be said, the check begins at once, unless `check` is false; POST …/check says what is left.',
     body: SaveMapping,
     answer: ImportView,
     status: 200,

@@ -21,9 +21,8 @@ import { SaveNote, SaveNotices } from './Saving';
 import { SourceZone } from './SourceZone';
 import { DraftStore } from './store';
 import { TitleZone } from './TitleZone';
-import { UndoButtons } from './UndoButtons';
+import { UndoButtons, useUndoKeys } from './UndoButtons';
 import { DraftContext, useEditor } from './use-editor';
-import { useUndoKeys } from './use-undo-keys';
 
 /** A template's draft: its drawing and its form, saved while it is written. */
 export function DraftEditor({ data }: { readonly data: DraftPageData }) {

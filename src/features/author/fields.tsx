@@ -174,8 +174,13 @@ export function ChoiceAt({
   );
 }
 
-/** Any of several values, kept in the order in which they are offered. */
-export function ChecksAt({ at, label, choices }: FieldAt & { readonly choices: readonly Choice[] }) {
+/** Any of several values, kept in the order in which they are offered. `isOptional`: a list of none is left out. */
+export function ChecksAt({
+  at,
+  label,
+  choices,
+  isOptional = false,
+}: FieldAt & { readonly choices: readonly Choice[]; readonly isOptional?: boolean }) {
   const store = useDraft();
   const list = useListAt(at);
   const fault = useFaultAt(at);
@@ -193,7 +198,12 @@ export function ChecksAt({ at, label, choices }: FieldAt & { readonly choices: r
               key={one.value}
               disabled={isReadOnly}
               checked={list.includes(one.value)}
-              onChange={() => store.edit({ do: 'set', at, value: toggle(one.value) })}
+              onChange={() => {
+                const value = toggle(one.value);
+                store.edit(
+                  isOptional && value.length === 0 ? { do: 'remove', at } : { do: 'set', at, value },
+                );
+              }}
             >
               {one.label}
             </Checkbox>

@@ -43,10 +43,10 @@ export function edited(history: History, edits: readonly Edit[], now: number): H
   return { document, past: [...before, step].slice(-MOST_STEPS), future: [] };
 }
 
-/** The one field that the edits type a text into. */
+/** The one field that the edits write: a text, or what a text of a table's cell stands for. */
 function fieldOf(edits: readonly Edit[]): string | null {
   const [only, another] = edits;
-  return only?.do === 'set' && typeof only.value === 'string' && another === undefined ? only.at : null;
+  return only?.do === 'set' && !Array.isArray(only.value) && another === undefined ? only.at : null;
 }
 
 export function undone(history: History): History {

@@ -19,11 +19,15 @@ const share = z.number().min(0).max(1);
 /** Typed from memory: a librarian of the practice confirms it against the print before relying on it. */
 const cited = { clause: words(120), from_memory: z.boolean() };
 
+const setFactor = z.union([factor, z.strictObject({ factor, by: z.enum(REDUCTIONS) })], {
+  error: 'Give a number, 1.5, or one that is reduced, 1.5 ψ0.',
+});
+
 const combination = z.strictObject({
   id: key.max(60),
   name: words(120),
   factors: z
-    .partialRecord(group, z.union([factor, z.strictObject({ factor, by: z.enum(REDUCTIONS) })]))
+    .partialRecord(group, setFactor)
     .refine((factors) => Object.keys(factors).length > 0, 'Give the factor of one group at least.'),
   when: words(300),
   ...cited,

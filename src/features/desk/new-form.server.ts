@@ -1,7 +1,9 @@
 import { beginDraft } from '@/features/review/begin.server';
 import { NewDraft } from '@/features/review/draft';
+import { isSetKind } from '@/features/review/read-set';
 import { DOCUMENT_KINDS, type DocumentKind } from '@/features/review/review';
 import type { Actor } from '@/features/review/rows.server';
+import { emptySet } from '@/features/sets-editor/start';
 import { type Fault, invalid } from '@/lib/app-error';
 import { read } from '@/lib/read';
 import { paths } from '@/paths';
@@ -25,7 +27,7 @@ export const takeNewDocument = (actor: Actor, form: FormData): Promise<Outcome> 
     const typed = textOf(form, 'slug').trim();
     const slug = typed === '' && typeof given['slug'] === 'string' ? given['slug'] : typed;
     if (slug === '') throw invalid([at('/slug', 'Give it an address: small letters, digits and hyphens.')]);
-    const reading = read(NewDraft, { ...startOf(form), ...(bundle && { bundle }) });
+    const reading = read(NewDraft, bundle ? { bundle } : startOf(form, kind));
     if (!reading.ok) throw invalid(reading.faults);
     const made = await beginDraft(actor, { kind, slug }, reading.value).catch((error: unknown) => {
       throw placed(error);
@@ -33,10 +35,11 @@ export const takeNewDocument = (actor: Actor, form: FormData): Promise<Outcome> 
     return paths.libraryDraft(made.kind, made.slug, made.revision);
   });
 
-/** "propped-cantilever 3": the revision that another document begins from. */
-function startOf(form: FormData) {
+/** "propped-cantilever 3": the revision that another document begins from; a set begins with its tables empty. */
+function startOf(form: FormData, kind: DocumentKind) {
   const [slug, revision] = textOf(form, 'from').split(' ');
-  return slug && revision ? { from: { slug, revision: Number(revision) } } : {};
+  if (slug && revision) return { from: { slug, revision: Number(revision) } };
+  return isSetKind(kind) ? { document: emptySet(kind) } : {};
 }
 
 async function bundleOf(form: FormData): Promise<Record<string, unknown> | null> {

@@ -1,0 +1,50 @@
+import { type ClipboardEvent, useState } from 'react';
+import { useReadOnly } from '@/features/author/fields';
+import { sameValue } from '@/features/author/merge';
+import { useDraft, useFaultIn, useSnapshot } from '@/features/author/use-editor';
+import { type Column, cellAt, cellEdit, cellText, cellValue } from './cells';
+
+interface CellProps {
+  /** The row's pointer. */
+  readonly row: string;
+  readonly column: Column;
+  /** Of the row: "610-q". */
+  readonly name: string;
+  /** The cell's place in its table, for the arrow keys. */
+  readonly place: readonly [row: number, column: number];
+  /** Id of the line that says the row's faults. */
+  readonly noteId: string;
+  readonly onPaste: (event: ClipboardEvent<HTMLInputElement>) => void;
+}
+
+/** One field of a table: it shows what was typed while that still is what the document says. */
+export function Cell({ row, column, name, place, noteId, onPaste }: CellProps) {
+  const store = useDraft();
+  const value = useSnapshot(({ history }) => cellAt(history.document, row, column));
+  const isFaulty = useFaultIn(`${row}/${column.key}`) !== undefined;
+  const [typed, setTyped] = useState('');
+  const shown = sameValue(cellValue(typed, column), value) ? typed : cellText(value, column);
+  const isFigure = column.kind !== 'text';
+  return (
+    <input
+      className={`input md:pointer-fine:min-h-28 md:text-schedule ${isFigure ? 'text-right' : ''}`}
+      data-at={`${row}/${column.key}`}
+      data-row={place[0]}
+      data-column={place[1]}
+      aria-label={`${column.label}, ${name}`}
+      aria-invalid={isFaulty || undefined}
+      aria-describedby={isFaulty ? noteId : undefined}
+      autoComplete="off"
+      spellCheck={false}
+      inputMode={column.kind === 'number' ? 'decimal' : undefined}
+      readOnly={useReadOnly()}
+      value={shown}
+      onPaste={onPaste}
+      onBlur={() => setTyped(cellText(value, column))}
+      onChange={({ target }) => {
+        setTyped(target.value);
+        store.edit(cellEdit(row, target.value, column));
+      }}
+    />
+  );
+}

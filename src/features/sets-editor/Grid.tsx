@@ -1,0 +1,209 @@
+import { type ClipboardEvent, type ReactNode, useId, useState } from 'react';
+import { Button } from '@/components/ui/Button';
+import type { Pointer } from '@/features/author/edit';
+import { useReadOnly } from '@/features/author/fields';
+import { useDraft, useIsSelected, useSnapshot } from '@/features/author/use-editor';
+import { Cell } from './Cell';
+import { type Column, isTable, pastedRows, pasteEdits } from './cells';
+import { moveInGrid } from './grid-keys';
+
+export interface GridRow {
+  readonly at: Pointer;
+  /** What it is called to a screen reader's user: "combination 2". */
+  readonly name: string;
+}
+
+interface GridProps {
+  readonly caption: ReactNode;
+  readonly columns: readonly Column[];
+  /** Heads that say more than the column's label. */
+  readonly heads?: Readonly<Record<string, ReactNode>>;
+  /** Widths of the columns by key, as CSS; the others share what is left. */
+  readonly widths: Readonly<Record<string, string>>;
+  readonly rows: readonly GridRow[];
+  /** Under a row that is opened: the rest of its fields, and what may be done with it. */
+  readonly more?: (row: GridRow) => ReactNode;
+  /** Under a row's first field. */
+  readonly below?: (row: GridRow) => ReactNode;
+}
+
+/** Entries of a set as a table of fields. */
+export function Grid({ caption, columns, heads = {}, widths, rows, more, below }: GridProps) {
+  const store = useDraft();
+  const [left, setLeft] = useState(0);
+  const paste = (row: number, column: number) => (event: ClipboardEvent<HTMLInputElement>) => {
+    const text = event.clipboardData.getData('text/plain');
+    if (!isTable(text) || store.snapshot.readOnly) return;
+    event.preventDefault();
+    const targets = rows.slice(row).map(({ at }) => at);
+    const filled = pasteEdits(pastedRows(text), targets, columns.slice(column));
+    store.edit(...filled.edits);
+    setLeft(filled.left);
+  };
+  return (
+    <>
+      <table className="schedule stacking table-fixed md:[&_td]:px-4" onKeyDown={moveInGrid}>
+        <caption className="max-md:block">{caption}</caption>
+        <colgroup className="max-md:hidden">
+          {columns.map(({ key }) => (
+            <col key={key} style={{ width: widths[key] }} />
+          ))}
+          {more && <col style={{ width: '4.5rem' }} />}
+        </colgroup>
+        <thead>
+          <tr>
+            {columns.map(({ key, label, kind }) => (
+              <th key={key} scope="col" className={kind === 'text' ? undefined : 'figure'}>
+                {heads[key] ?? label}
+              </th>
+            ))}
+            {more && (
+              <th scope="col">
+                <span className="sr-only">More of the row</span>
+              </th>
+            )}
+          </tr>
+        </thead>
+        {rows.map((row, index) => (
+          <Row key={row.at} {...{ row, index, columns, more, below }} paste={paste} />
+        ))}
+      </table>
+      {left > 0 && (
+        <p role="status" className="mt-6 text-schedule text-ochre-ink">
+          {left === 1 ? 'One pasted line' : `${left} pasted lines`} had no row. Add rows, then paste again.
+        </p>
+      )}
+    </>
+  );
+}
+
+interface RowProps extends Pick<GridProps, 'columns'> {
+  readonly more: GridProps['more'] | undefined;
+  readonly below: GridProps['below'] | undefined;
+  readonly row: GridRow;
+  readonly index: number;
+  readonly paste: (row: number, column: number) => (event: ClipboardEvent<HTMLInputElement>) => void;
+}
+
+function Row({ row, index, columns, more, below, paste }: RowProps) {
+  const store = useDraft();
+  const isOpen = useIsSelected(row.at) && more !== undefined;
+  const { faults, onBlur } = useRowFaults(row.at, columns);
+  const noteId = useId();
+  const span = columns.length + (more ? 1 : 0);
+  return (
+    <tbody data-part={row.at} onBlur={onBlur}>
+      <tr data-chosen={isOpen || undefined}>
+        {columns.map((column, place) => (
+          <td key={column.key} data-label={column.label} className="align-top! max-md:[&_input]:max-w-200">
+            <Cell
+              row={row.at}
+              column={column}
+              name={row.name}
+              place={[index, place]}
+              noteId={noteId}
+              onPaste={paste(index, place)}
+            />
+            {place === 0 && below?.(row)}
+          </td>
+        ))}
+        {more && (
+          <td className="align-top! max-md:pt-6!">
+            <Button
+              size="small"
+              aria-expanded={isOpen}
+              aria-label={`${isOpen ? 'Less' : 'More'} of ${row.name}`}
+              onClick={() => store.select(isOpen ? null : row.at)}
+            >
+              {isOpen ? 'Less' : 'More'}
+            </Button>
+          </td>
+        )}
+      </tr>
+      {faults !== '' && (
+        <tr>
+          <td colSpan={span} className="py-2! max-md:text-left!">
+            <span id={noteId} role="alert" className="text-note font-semibold text-error">
+              {faults}
+            </span>
+          </td>
+        </tr>
+      )}
+      {isOpen && (
+        <tr data-chosen>
+          <td colSpan={span} className="max-md:block! max-md:text-left!">
+            <div className="grid gap-12 py-8">{more?.(row)}</div>
+          </td>
+        </tr>
+      )}
+    </tbody>
+  );
+}
+
+/** What is wrong with a row's cells, in one text. What is still empty is not blamed before the row is left. */
+function useRowFaults(at: Pointer, columns: readonly Column[]) {
+  const [isLeft, setLeft] = useState(false);
+  const faults = useSnapshot(({ faults: all }) => {
+    const own = all.filter(({ pointer }) => pointer === at || pointer.startsWith(`${at}/`));
+    const words = own.flatMap(({ pointer, code, message }) => {
+      if (!isLeft && (code === 'missing' || message.startsWith('Empty.'))) return [];
+      const key = pointer.slice(at.length + 1);
+      const column = columns.find((one) => key === one.key || key.startsWith(`${one.key}/`));
+      const isBlank = key === '' || columns.some((one) => one.key.startsWith(`${key}/`));
+      return column ? [`${column.label}: ${message}`] : isBlank ? [message] : [];
+    });
+    return words.join(' ');
+  });
+  const onBlur = ({
+    currentTarget,
+    relatedTarget,
+  }: {
+    currentTarget: Element;
+    relatedTarget: EventTarget | null;
+  }) => {
+    if (!(relatedTarget instanceof Node && currentTarget.contains(relatedTarget))) setLeft(true);
+  };
+  return { faults, onBlur };
+}
+
+/** Duplicate, move, remove: of an entry of a list. */
+export function RowActions({
+  row,
+  index,
+  count,
+  onDuplicate,
+  onMove,
+  onRemove,
+  children,
+}: {
+  readonly row: GridRow;
+  readonly index: number;
+  readonly count: number;
+  readonly onDuplicate: () => void;
+  readonly onMove: (to: number) => void;
+  readonly onRemove: () => void;
+  readonly children?: ReactNode;
+}) {
+  if (useReadOnly()) return null;
+  return (
+    <div className="flex flex-wrap gap-10">
+      {children}
+      <Button size="small" aria-label={`Duplicate ${row.name}`} onClick={onDuplicate}>
+        Duplicate
+      </Button>
+      {index > 0 && (
+        <Button size="small" aria-label={`Move ${row.name} up`} onClick={() => onMove(index - 1)}>
+          Up
+        </Button>
+      )}
+      {index < count - 1 && (
+        <Button size="small" aria-label={`Move ${row.name} down`} onClick={() => onMove(index + 1)}>
+          Down
+        </Button>
+      )}
+      <Button size="small" aria-label={`Remove ${row.name}`} onClick={onRemove}>
+        Remove
+      </Button>
+    </div>
+  );
+}

@@ -1,0 +1,126 @@
+import { type ComponentType, useEffect, useRef, useState } from 'react';
+import { ZoneHeading } from '@/components/ui/ZoneHeading';
+import { type Autosave, startAutosave } from '@/features/author/autosave.api';
+import { ChangeZone } from '@/features/author/ChangeZone';
+import { type Checker, startCheck } from '@/features/author/check.api';
+import { DraftBlock } from '@/features/author/DraftBlock';
+import { FaultZone } from '@/features/author/FaultZone';
+import { SaveNote, SaveNotices } from '@/features/author/Saving';
+import { DraftStore } from '@/features/author/store';
+import { UndoButtons, useUndoKeys } from '@/features/author/UndoButtons';
+import { DraftContext } from '@/features/author/use-editor';
+import { partName } from '@/features/desk/part-name';
+import { capital } from '@/features/desk/words';
+import { SET_READERS, type SetKind } from '@/features/review/read-set';
+import { CategoryZone } from './CategoryZone';
+import { CombinationZone } from './CombinationZone';
+import { FactorTools } from './FactorTools';
+import { CombinationHead, GroupZone } from './HeadZone';
+import { PatternZone } from './PatternZone';
+import { PreviewZone } from './PreviewZone';
+import type { SetPageData } from './page';
+
+interface ZoneProps {
+  readonly data: SetPageData;
+}
+
+type Zone = readonly [title: string, Fields: ComponentType<ZoneProps>];
+
+const ZONES: Readonly<
+  Partial<Record<SetKind, { readonly form: readonly Zone[]; readonly side: readonly Zone[] }>>
+> = {
+  'combination-set': {
+    form: [
+      ['Title', CombinationHead],
+      ['Groups of loads', GroupZone],
+      ['Combinations', StrengthZone],
+      ['Service combinations', ServiceZone],
+      ['ψ by category', CategoryZone],
+      ['How the loads stand', PatternZone],
+    ],
+    side: [['As they are used', ({ data }) => <PreviewZone issued={data.issued} />]],
+  },
+};
+
+function StrengthZone() {
+  return (
+    <CombinationZone list="/strength" caption="Every one is run on a member with loads of its groups">
+      <FactorTools />
+    </CombinationZone>
+  );
+}
+
+function ServiceZone() {
+  return <CombinationZone list="/service" caption="Criteria name one of them for each limit of deflection" />;
+}
+
+/** A set is read in a moment: no worker is needed. */
+const checkerOf = (kind: SetKind): Checker => ({
+  check: (document, answer) => {
+    const reading = SET_READERS[kind](document);
+    answer(reading.ok ? [] : reading.faults);
+  },
+  stop: () => {},
+});
+
+const letterOf = (index: number): string => String.fromCharCode('A'.charCodeAt(0) + index);
+
+/** The draft of a set: its tables as a form, what it comes to beside it, saved while it is written. */
+export function SetEditor({ data }: ZoneProps) {
+  const { draft, isEditable, kind } = data;
+  const [store] = useState(
+    () => new DraftStore(draft, !isEditable, (document, at) => capital(partName(at, document))),
+  );
+  const saver = useRef<Autosave | null>(null);
+  useEffect(() => {
+    const stopCheck = startCheck(store, checkerOf(kind));
+    const autosave = isEditable ? startAutosave(store, draft) : null;
+    saver.current = autosave;
+    return () => {
+      stopCheck();
+      autosave?.stop();
+    };
+  }, [store, draft, isEditable, kind]);
+  useUndoKeys(store);
+  const autosave = () => saver.current;
+  const { form, side } = ZONES[kind] ?? { form: [], side: [] };
+  const zones: readonly Zone[] = [...form, ['What is new', ChangeZone]];
+  return (
+    <DraftContext value={store}>
+      <SaveNotices autosave={autosave} />
+      <div className="grid flex-1 grid-cols-[minmax(0,1fr)] lg:grid-cols-[minmax(0,1fr)_var(--title-column)]">
+        <div className="min-w-0">
+          {zones.map(([title, Fields], index) => (
+            <section key={title} className="zone border-b border-ink">
+              <ZoneHeading letter={letterOf(index)}>{title}</ZoneHeading>
+              <Fields data={data} />
+            </section>
+          ))}
+        </div>
+        <aside className="flex min-w-0 flex-col border-ink max-lg:border-t lg:border-l">
+          {/* As long as the form: what sticks stays clear of the title block. */}
+          <div className="flex-1">
+            <div className="lg:sticky lg:top-0 lg:max-h-[calc(100vh-54px)] lg:overflow-y-auto">
+              <section className="zone">
+                <ZoneHeading letter={letterOf(zones.length)} note={<SaveNote />}>
+                  Faults
+                </ZoneHeading>
+                <FaultZone none="None. It can be sent to review." />
+                <UndoButtons />
+              </section>
+              {side.map(([title, Fields], index) => (
+                <section key={title} className="zone border-t border-ink">
+                  <ZoneHeading letter={letterOf(zones.length + 1 + index)}>{title}</ZoneHeading>
+                  <Fields data={data} />
+                </section>
+              ))}
+            </div>
+          </div>
+          <div>
+            <DraftBlock data={data} autosave={autosave} versionNow={() => store.snapshot.version} />
+          </div>
+        </aside>
+      </div>
+    </DraftContext>
+  );
+}

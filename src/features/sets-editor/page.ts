@@ -1,0 +1,15 @@
+import type { UnitSystemName } from '@/engine/quantity';
+import type { DraftView, Written } from '@/features/review/draft';
+import type { SetKind } from '@/features/review/read-set';
+
+/** What the page of a set's draft is given. */
+export interface SetPageData {
+  readonly kind: SetKind;
+  readonly draft: DraftView;
+  readonly practice: string;
+  readonly system: UnitSystemName;
+  /** Whether this person may change it. */
+  readonly isEditable: boolean;
+  /** The issued revision as its author writes it, to tell what changes; null where none is issued. */
+  readonly issued: Written | null;
+}

@@ -2,13 +2,15 @@ import { RichHtml } from '@/components/drawing/marks/RichHtml';
 import { ZoneHeading } from '@/components/ui/ZoneHeading';
 import { formatNumber, type UnitSystemName } from '@/engine/quantity';
 import { axesOf, FIELD_WORDS, figureOf, richUnitOf, shownName, symbolOf } from './display';
-import { measureOf, type SectionField } from './query';
+import { measureOf, SECTION_MEASURES, type SectionField, type SectionMeasure } from './query';
 import type { SectionItem } from './section';
 
 interface ComparisonProps {
   readonly pinned: readonly SectionItem[];
   /** Shown where nothing is pinned. */
   readonly chosen: SectionItem | null;
+  /** What was chosen to be shown of sections; null: what tells them apart at a glance. */
+  readonly columns: readonly SectionMeasure[] | null;
   readonly system: UnitSystemName;
 }
 
@@ -30,10 +32,11 @@ function difference(item: SectionItem, first: SectionItem, field: SectionField):
 }
 
 /** What the pinned sections are, and by how much they differ from the first; the chosen one while none is pinned. */
-export function Comparison({ pinned, chosen, system }: ComparisonProps) {
+export function Comparison({ pinned, chosen, columns, system }: ComparisonProps) {
   const isPinned = pinned.length > 0;
   const shown = isPinned || chosen === null ? pinned : [chosen];
   const [first] = shown;
+  const compared = columns?.map((measure) => SECTION_MEASURES[measure]) ?? COMPARED;
   return (
     <section className="zone">
       <ZoneHeading letter="B">{pinned.length > 1 ? 'Compared with 1' : 'At a glance'}</ZoneHeading>
@@ -53,7 +56,7 @@ export function Comparison({ pinned, chosen, system }: ComparisonProps) {
             </tr>
           </thead>
           <tbody>
-            {COMPARED.map((field) => (
+            {compared.map((field) => (
               <tr key={field}>
                 <th scope="row">
                   <FieldName field={field} system={system} />

@@ -2,10 +2,10 @@ import { Button } from '@/components/ui/Button';
 import type { UnitSystemName } from '@/engine/quantity';
 import { paths } from '@/paths';
 import type { Answer } from './answer';
-import { COLUMN_FIELDS } from './columns';
+import { USUAL_COLUMNS } from './columns';
 import { sectionsCsv } from './csv';
 import { FIELD_WORDS } from './display';
-import type { SectionQuery } from './query';
+import { SECTION_MEASURES, type SectionMeasure, type SectionQuery } from './query';
 
 interface ResultLineProps {
   readonly answer: Answer;
@@ -15,6 +15,12 @@ interface ResultLineProps {
   readonly system: UnitSystemName;
   /** Nothing is called as was typed; these are only like it. */
   readonly nearest: boolean;
+  /** What the schedule shows, and a copy takes along; null: the usual ones. */
+  readonly columns: readonly SectionMeasure[] | null;
+  /** Id of the choice of columns, and whether it is open. */
+  readonly chooser: string;
+  readonly isChoosing: boolean;
+  readonly onChoosing: () => void;
   readonly said: string;
   readonly onSaid: (words: string) => void;
 }
@@ -34,17 +40,9 @@ function countWords({ answer: { total, query }, of, nearest }: ResultLineProps):
 
 /** How many there are, in which order, which of them are in view; and the way to take them along. */
 export function ResultLine(props: ResultLineProps) {
-  const { view, answer, said, onSaid, system } = props;
+  const { view, answer, said, onSaid, system, columns } = props;
   const { rows, total, query } = answer;
   const [count, words] = countWords(props);
-  const copy = async () => {
-    await navigator.clipboard.writeText(sectionsCsv(rows, COLUMN_FIELDS, system));
-    onSaid(
-      rows.length < total
-        ? `The first ${rows.length} of ${total} rows are copied as CSV, those read so far. Scroll down to read more.`
-        : `${rows.length} rows are copied as CSV.`,
-    );
-  };
   return (
     <div className="flex min-h-34 flex-wrap items-center gap-x-18 gap-y-4 border-b border-rule px-(--pad) py-6 text-schedule">
       <p role="status">
@@ -74,13 +72,42 @@ export function ResultLine(props: ResultLineProps) {
       {rows.length > 0 && (
         <Button
           tone="text"
-          onClick={() =>
-            copy().catch(() => onSaid('The browser does not let this page copy. Allow it, then copy again.'))
-          }
+          aria-expanded={props.isChoosing}
+          aria-controls={props.isChoosing ? props.chooser : undefined}
+          data-columns
+          onClick={props.onChoosing}
         >
-          Copy as CSV
+          Columns
         </Button>
       )}
+      {rows.length > 0 && <CopyCsv {...{ rows, total, columns, system, onSaid }} />}
     </div>
+  );
+}
+
+interface CopyCsvProps extends Pick<ResultLineProps, 'columns' | 'system' | 'onSaid'> {
+  readonly rows: Answer['rows'];
+  readonly total: number;
+}
+
+function CopyCsv({ rows, total, columns, system, onSaid }: CopyCsvProps) {
+  const copy = async () => {
+    const fields = (columns ?? USUAL_COLUMNS).map((measure) => SECTION_MEASURES[measure]);
+    await navigator.clipboard.writeText(sectionsCsv(rows, fields, system));
+    onSaid(
+      rows.length < total
+        ? `The first ${rows.length} of ${total} rows are copied as CSV, those read so far. Scroll down to read more.`
+        : `${rows.length} rows are copied as CSV.`,
+    );
+  };
+  return (
+    <Button
+      tone="text"
+      onClick={() =>
+        copy().catch(() => onSaid('The browser does not let this page copy. Allow it, then copy again.'))
+      }
+    >
+      Copy as CSV
+    </Button>
   );
 }

@@ -1,18 +1,21 @@
-import { useCallback, useMemo, useState } from 'react';
+import { useCallback, useId, useMemo, useState } from 'react';
 import { Button } from '@/components/ui/Button';
 import { useKeys } from '@/components/ui/use-keys';
 import type { UnitSystemName } from '@/engine/quantity';
 import { cleared, type PageState, withSort } from './address';
 import type { Answer, FirstAnswer } from './answer';
+import { ColumnChooser } from './ColumnChooser';
 import { Comparison } from './Comparison';
 import { EditionBlock } from './EditionBlock';
 import type { EditionView } from './edition';
 import { PinTray } from './PinTray';
+import type { SectionMeasure } from './query';
 import { ResultLine } from './ResultLine';
 import { SectionFilters } from './SectionFilters';
 import { SectionTable } from './SectionTable';
 import { useAddress } from './use-address';
 import { useAnswerHere } from './use-all-sections';
+import { type ColumnChoosing, useColumns } from './use-columns';
 import { useSearch } from './use-search';
 import { useServerAnswer } from './use-server-answer';
 
@@ -27,6 +30,8 @@ export interface SectionSearchProps {
   readonly editions: readonly EditionView[];
   /** How many members use a section, by its key. */
   readonly uses: readonly (readonly [string, number])[];
+  /** Columns that the person has chosen; null: the usual ones. */
+  readonly columns: readonly SectionMeasure[] | null;
 }
 
 /** Of a library no longer than this every row is read into the browser. */
@@ -58,6 +63,7 @@ function Search(props: SearchProps) {
   const { system, editions, practice, state, setState, answer } = props;
   const found = useSearch(answer, state, setState, system);
   const { chosen } = found;
+  const choosing = useColumns(state, setState, props.columns);
   useKeys({
     p: () => chosen && found.pin(chosen),
     '[': () => found.nudge(-1),
@@ -66,7 +72,7 @@ function Search(props: SearchProps) {
   return (
     <>
       <SectionFilters {...{ state, system, editions }} spread={answer.spread} onState={setState} />
-      <Schedule {...props} found={found} />
+      <Schedule {...props} found={found} choosing={choosing} />
       <div className="grid flex-1 border-t-2 border-ink lg:grid-cols-[minmax(0,1fr)_414px_var(--title-column)] md:max-lg:grid-cols-[minmax(0,1fr)_var(--title-column)] [&>*]:border-ink [&>.zone]:border-t-0 lg:[&>*+*]:border-l md:max-lg:[&>:first-child]:col-span-2 md:max-lg:[&>:first-child]:border-b md:max-lg:[&>:last-child]:border-l max-md:[&>*+*]:border-t">
         <PinTray
           {...{ chosen, editions, system }}
@@ -76,7 +82,7 @@ function Search(props: SearchProps) {
             document.querySelector<HTMLElement>('[role="grid"]')?.focus({ preventScroll: true });
           }}
         />
-        <Comparison {...{ chosen, system }} pinned={answer.pinned} />
+        <Comparison {...{ chosen, system }} columns={choosing.columns} pinned={answer.pinned} />
         <EditionBlock
           {...{ practice, chosen }}
           edition={editions.find(({ table }) => table === chosen?.table)}
@@ -94,8 +100,11 @@ function Schedule({
   setState,
   answer,
   found,
+  choosing,
   ...props
-}: SearchProps & { found: ReturnType<typeof useSearch> }) {
+}: SearchProps & { found: ReturnType<typeof useSearch>; choosing: ColumnChoosing }) {
+  const chooser = useId();
+  const [isChoosing, setChoosing] = useState(false);
   const [view, setView] = useState({ first: 1, last: 0 });
   const onView = useCallback((first: number, last: number) => setView({ first, last }), []);
   const uses = useMemo(() => new Map(props.uses), [props.uses]);
@@ -107,7 +116,20 @@ function Schedule({
         said={found.said}
         nearest={found.nearest}
         onSaid={found.setSaid}
+        columns={choosing.columns}
+        onChoosing={() => setChoosing((before) => !before)}
+        {...{ chooser, isChoosing }}
       />
+      {isChoosing && (
+        <ColumnChooser
+          {...{ choosing, system }}
+          id={chooser}
+          onClose={() => {
+            setChoosing(false);
+            document.querySelector<HTMLElement>('[data-columns]')?.focus();
+          }}
+        />
+      )}
       {answer.total === 0 && answer.isSettled ? (
         <NoSection state={state} onClear={() => setState(cleared)} />
       ) : (
@@ -116,6 +138,7 @@ function Schedule({
           rows={answer.rows}
           total={answer.total}
           query={answer.query}
+          shown={choosing.columns}
           pins={state.pins}
           at={found.at}
           onChoose={found.choose}

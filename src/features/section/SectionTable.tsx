@@ -5,9 +5,9 @@ import { GraduatedRule } from '@/components/drawing/GraduatedRule';
 import type { UnitSystemName } from '@/engine/quantity';
 import { paths } from '@/paths';
 import { keyOf } from './address';
-import { COLUMNS_BY_ID, ColumnHead, columnsIn } from './columns';
+import { type Column, ColumnHead, columnDefs, columnsOf } from './columns';
 import { shownName, toShown, unitOf } from './display';
-import { measureOf, type SectionQuery } from './query';
+import { measureOf, type SectionMeasure, type SectionQuery } from './query';
 import type { SectionItem } from './section';
 import { useRows } from './use-rows';
 
@@ -17,6 +17,8 @@ export interface SectionTableProps {
   readonly total: number;
   readonly query: SectionQuery;
   readonly system: UnitSystemName;
+  /** Measures that were chosen to be shown; null: the usual ones. */
+  readonly shown: readonly SectionMeasure[] | null;
   readonly pins: readonly string[];
   /** Index of the chosen row. */
   readonly at: number;
@@ -32,14 +34,6 @@ export interface SectionTableProps {
 
 /** So many rows before the end of those read, more are read. */
 const NEAR = 100;
-
-/** What a phone shows of a section beside its name. */
-const PHONE = ['mass', 'w_pl'];
-const phoneUnit = (id: string, system: UnitSystemName): string | undefined => {
-  const shown = PHONE.includes(id) ? COLUMNS_BY_ID.get(id) : undefined;
-  return shown && unitOf(shown.field, system);
-};
-const COLUMNS = { metric: columnsIn('metric'), us: columnsIn('us') };
 
 /** Where a key takes the chosen row. */
 function moved(key: string, at: number, page: number, rows: number): number | null {
@@ -71,12 +65,18 @@ function useReport(
 }
 
 /** The rows that are drawn, as the table's model: the model of a long answer would be made anew with every page. */
-function useDrawnRows(rows: readonly SectionItem[], system: UnitSystemName, drawn: readonly VirtualItem[]) {
+function useDrawnRows(
+  rows: readonly SectionItem[],
+  columns: readonly Column[],
+  system: UnitSystemName,
+  drawn: readonly VirtualItem[],
+) {
   const [from, to] = [drawn[0]?.index ?? 0, (drawn.at(-1)?.index ?? -1) + 1];
   const data = useMemo(() => rows.slice(from, to), [rows, from, to]);
+  const defs = useMemo(() => columnDefs(columns, system), [columns, system]);
   const table = useReactTable({
     data,
-    columns: COLUMNS[system],
+    columns: defs,
     getCoreRowModel: getCoreRowModel(),
     manualSorting: true,
     getRowId: keyOf,
@@ -86,11 +86,12 @@ function useDrawnRows(rows: readonly SectionItem[], system: UnitSystemName, draw
 
 /** The sections that meet the query: only the rows in view are drawn, and the rule beside them is the scroll bar. */
 export function SectionTable(props: SectionTableProps) {
-  const { rows, total, query, system, at, pins, uses, onChoose, onPin } = props;
+  const { rows, total, query, system, shown, at, pins, uses, onChoose, onPin } = props;
   const id = useId();
+  const columns = useMemo(() => columnsOf(shown, system), [shown, system]);
   const view = useRows(rows.length);
   useReport(props, view);
-  const drawn = useDrawnRows(rows, system, view.drawn);
+  const drawn = useDrawnRows(rows, columns, system, view.drawn);
   const onKeyDown = (event: KeyboardEvent) => {
     const item = rows[at];
     if (event.key === 'Enter' && item && event.target === event.currentTarget) {
@@ -118,13 +119,13 @@ export function SectionTable(props: SectionTableProps) {
           tabIndex={0}
           onKeyDown={onKeyDown}
         >
-          <Heads {...props} />
+          <Heads {...props} columns={columns} />
           <tbody>
             <Filler height={view.before} />
             {drawn.map(({ row, index }) => (
               <SectionRow
                 key={row.id}
-                {...{ row, index, system, onChoose, onPin }}
+                {...{ row, index, columns, onChoose, onPin }}
                 id={`${id}-${index}`}
                 pin={pins.indexOf(row.id) + 1}
                 isChosen={index === at}
@@ -132,7 +133,7 @@ export function SectionTable(props: SectionTableProps) {
               />
             ))}
             <Filler height={view.after} />
-            {rows.length < total && <Unread rows={total - rows.length} />}
+            {rows.length < total && <Unread rows={total - rows.length} columns={columns.length + 3} />}
           </tbody>
         </table>
       </div>
@@ -150,9 +151,9 @@ const Filler = ({ height }: { height: number }) =>
     </tr>
   );
 
-const Unread = ({ rows }: { rows: number }) => (
+const Unread = ({ rows, columns }: { rows: number; columns: number }) => (
   <tr data-filler>
-    <td colSpan={COLUMNS_BY_ID.size + 3} className="h-28 px-(--pad)! text-left text-ink-2">
+    <td colSpan={columns} className="h-28 px-(--pad)! text-left text-ink-2">
       … {rows} more are read on the way down
     </td>
   </tr>
@@ -203,7 +204,12 @@ function sortOf({ q, sort }: SectionQuery, field: string): 'ascending' | 'descen
   return descending ? 'descending' : 'ascending';
 }
 
-function Heads({ query, system, onSort }: SectionTableProps) {
+function Heads({
+  query,
+  system,
+  columns,
+  onSort,
+}: SectionTableProps & { readonly columns: readonly Column[] }) {
   return (
     <thead>
       <tr aria-rowindex={1}>
@@ -215,14 +221,9 @@ function Heads({ query, system, onSort }: SectionTableProps) {
             Section
           </button>
         </th>
-        {[...COLUMNS_BY_ID].map(([id, { field, wide }]) => (
-          <th
-            key={id}
-            scope="col"
-            className={`figure ${wide ? 'max-lg:hidden' : ''}`}
-            aria-sort={sortOf(query, field)}
-          >
-            <button type="button" className="sort" onClick={() => onSort(id)}>
+        {columns.map(({ measure, field, className }) => (
+          <th key={measure} scope="col" className={className} aria-sort={sortOf(query, field)}>
+            <button type="button" className="sort" onClick={() => onSort(measure)}>
               <ColumnHead field={field} system={system} />
             </button>
           </th>
@@ -235,9 +236,10 @@ function Heads({ query, system, onSort }: SectionTableProps) {
   );
 }
 
-interface SectionRowProps extends Pick<SectionTableProps, 'system' | 'onChoose' | 'onPin'> {
+interface SectionRowProps extends Pick<SectionTableProps, 'onChoose' | 'onPin'> {
   readonly id: string;
   readonly row: Row<SectionItem>;
+  readonly columns: readonly Column[];
   readonly index: number;
   /** Its number among the pinned; 0 where it is not pinned. */
   readonly pin: number;
@@ -249,16 +251,16 @@ interface SectionRowProps extends Pick<SectionTableProps, 'system' | 'onChoose' 
 /** The model's rows are made anew with every window, the sections in them are not. */
 const isSameRow = (before: SectionRowProps, now: SectionRowProps): boolean =>
   before.row.original === now.row.original &&
+  before.columns === now.columns &&
   before.index === now.index &&
   before.pin === now.pin &&
   before.isChosen === now.isChosen &&
   before.used === now.used &&
-  before.system === now.system &&
   before.onChoose === now.onChoose &&
   before.onPin === now.onPin;
 
 const SectionRow = memo(function SectionRow(props: SectionRowProps) {
-  const { id, row, index, pin, isChosen, used, system, onChoose, onPin } = props;
+  const { id, row, columns, index, pin, isChosen, used, onChoose, onPin } = props;
   const item = row.original;
   const name = shownName(item.designation);
   return (
@@ -287,14 +289,14 @@ const SectionRow = memo(function SectionRow(props: SectionRowProps) {
           {name}
         </a>
       </th>
-      {row.getVisibleCells().map(({ id: cell, column: { columnDef, id: measure }, getContext }) => (
+      {row.getVisibleCells().map(({ id: cell, column, getContext }, i) => (
         <td
           key={cell}
-          className={`figure ${COLUMNS_BY_ID.get(measure)?.wide ? 'max-lg:hidden' : ''}`}
-          data-phone={phoneUnit(measure, system)}
-          data-before={measure === 'w_pl' ? 'plastic modulus' : undefined}
+          className={columns[i]?.className}
+          data-phone={columns[i]?.phoneUnit}
+          data-before={columns[i]?.phoneName}
         >
-          {flexRender(columnDef.cell, getContext())}
+          {flexRender(column.columnDef.cell, getContext())}
         </td>
       ))}
       <td className="figure text-ink-2">{used ?? '–'}</td>

@@ -1,49 +1,76 @@
 import { type ColumnDef, createColumnHelper } from '@tanstack/react-table';
 import { RichHtml } from '@/components/drawing/marks/RichHtml';
 import type { UnitSystemName } from '@/engine/quantity';
-import { axesOf, figureOf, richUnitOf, symbolOf } from './display';
+import { axesOf, FIELD_WORDS, figureOf, richUnitOf, symbolOf, unitOf } from './display';
 import { measureOf, SECTION_MEASURES, type SectionField, type SectionMeasure } from './query';
 import type { SectionItem } from './section';
 
-/** The order of the columns, and from which width on each is shown. */
-const SHOWN: readonly (readonly [SectionMeasure, 'always' | 'wide'])[] = [
-  ['mass', 'always'],
-  ['depth', 'always'],
-  ['width', 'always'],
-  ['tw', 'wide'],
-  ['tf', 'wide'],
-  ['r', 'wide'],
-  ['area', 'always'],
-  ['i_major', 'always'],
-  ['i_minor', 'wide'],
-  ['w_el', 'wide'],
-  ['w_pl', 'always'],
-  ['r_major', 'always'],
-  ['r_minor', 'always'],
-  ['j', 'wide'],
-  ['iw', 'wide'],
+/** What the schedule shows of a section where nobody has chosen, in order. */
+export const USUAL_COLUMNS: readonly SectionMeasure[] = [
+  'mass',
+  'depth',
+  'width',
+  'tw',
+  'tf',
+  'r',
+  'area',
+  'i_major',
+  'i_minor',
+  'w_el',
+  'w_pl',
+  'r_major',
+  'r_minor',
+  'j',
+  'iw',
 ];
+/** Of the usual ones, shown on wide screens alone; what was chosen is shown on every screen. */
+const WIDE: readonly SectionMeasure[] = ['tw', 'tf', 'r', 'i_minor', 'w_el', 'j', 'iw'];
 
-export const COLUMN_FIELDS = SHOWN.map(([measure]) => SECTION_MEASURES[measure]);
+export interface Column {
+  readonly measure: SectionMeasure;
+  readonly field: SectionField;
+  readonly className: string;
+  /** On a phone, which has room for two and no heads: its unit, and below the designation its name too. */
+  readonly phoneUnit: string | undefined;
+  readonly phoneName: string | undefined;
+}
 
-/** What the columns show, by their ids. `wide`: on wide screens alone. */
-export const COLUMNS_BY_ID: ReadonlyMap<string, { readonly field: SectionField; readonly wide: boolean }> =
-  new Map(
-    SHOWN.map(([measure, when]) => [measure, { field: SECTION_MEASURES[measure], wide: when === 'wide' }]),
-  );
+/** The columns of figures; null: the usual ones. Made once for all rows. */
+export function columnsOf(
+  chosen: readonly SectionMeasure[] | null,
+  system: UnitSystemName,
+): readonly Column[] {
+  const below = chosen === null ? 'w_pl' : chosen.find((measure) => measure !== 'mass');
+  return (chosen ?? USUAL_COLUMNS).map((measure) => {
+    const field = SECTION_MEASURES[measure];
+    return {
+      measure,
+      field,
+      className: chosen === null && WIDE.includes(measure) ? 'figure max-lg:hidden' : 'figure',
+      phoneUnit: measure === 'mass' || measure === below ? unitOf(field, system) : undefined,
+      phoneName: measure === below ? FIELD_WORDS[field].name : undefined,
+    };
+  });
+}
+
+/** The usual columns in their order are nobody's choice. */
+export const asChoice = (columns: readonly SectionMeasure[]): readonly SectionMeasure[] | null =>
+  columns.join() === USUAL_COLUMNS.join() ? null : columns;
 
 const column = createColumnHelper<SectionItem>();
 
-/** The columns of figures in a unit system. */
-export const columnsIn = (system: UnitSystemName): ColumnDef<SectionItem, number | null>[] =>
-  SHOWN.map(([measure]) => {
-    const field = SECTION_MEASURES[measure];
-    return column.accessor((item) => measureOf(item, field), {
+/** The same for the table's model, with figures in a unit system. */
+export const columnDefs = (
+  columns: readonly Column[],
+  system: UnitSystemName,
+): ColumnDef<SectionItem, number | null>[] =>
+  columns.map(({ measure, field }) =>
+    column.accessor((item) => measureOf(item, field), {
       id: measure,
       header: measure,
       cell: ({ row }) => figureOf(row.original, field, system),
-    });
-  });
+    }),
+  );
 
 /** Letter and unit; the mass by its name. */
 export function ColumnHead({ field, system }: { field: SectionField; system: UnitSystemName }) {

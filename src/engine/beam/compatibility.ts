@@ -31,9 +31,10 @@ export function solveCompatibility(
   const missing = units.map((unit, i) => {
     const sum = new Sum();
     addWorkOn(sum, members, unit, curve);
-    movements.forEach((movement, c) => {
-      if (movement.hi !== 0) sum.subtract(unit.reactions[c]!.times(movement));
-    });
+    for (const [c, reaction] of unit.reactions) {
+      const movement = movements[c]!;
+      if (movement.hi !== 0) sum.subtract(reaction.times(movement));
+    }
     gaps.push(sum.total());
     sum.subtract(imposed[i]!);
     return sum.total().negated();
@@ -54,12 +55,11 @@ function imposedOf({ beam, redundants }: Flexibility, moved: boolean): Wide[] {
 /** What would close the gaps if none of the prescribed movements undid another: Σ |r · movement|, and the gap's own. */
 function apart({ factors, reactions, units }: Flexibility, imposed: readonly Wide[], moved: boolean): Wide[] {
   const given = reactions.map(({ restraint }) => yielding(restraint, Wide.ZERO, moved).hi);
-  const sizes = units.map((unit, i) =>
-    given.reduce(
-      (sum, movement, c) => sum + Math.abs(unit.reactions[c]!.hi * movement),
-      Math.abs(imposed[i]!.hi),
-    ),
-  );
+  const sizes = units.map((unit, i) => {
+    let size = Math.abs(imposed[i]!.hi);
+    for (const [c, { hi }] of unit.reactions) size += Math.abs(hi * given[c]!);
+    return size;
+  });
   return sizes.some((size) => size > 0) ? factors.solve(sizes.map(Wide.of)) : sizes.map(() => Wide.ZERO);
 }
 

@@ -1,8 +1,15 @@
 import { Cholesky, type LowerRow, Wide } from '../linear/index';
-import { type Beam, defaultRedundants, placeRedundant, type Redundant } from '../model/index';
+import { type Beam, defaultRedundants, placeOf, placeRedundant, type Redundant } from '../model/index';
 import { type Mesh, meshOf } from './mesh';
 import { type Reaction, reactionsWithout } from './released';
-import { flexibilityBetween, type Member, membersOf, type UnitState, unitState } from './virtual-work';
+import {
+  bendsOf,
+  flexibilityBetween,
+  type Member,
+  membersOf,
+  type UnitState,
+  unitState,
+} from './virtual-work';
 
 /** All of the force method that does not depend on the loads: made once per geometry and set of redundants. */
 export type Flexibility = {
@@ -18,10 +25,6 @@ export type Flexibility = {
   factors: Cholesky;
 };
 
-/** Where a redundant acts. */
-export const placeOf = (beam: Beam, redundant: Redundant): number =>
-  redundant.component === 'moment' ? redundant.at : beam.supports[redundant.support]!.at;
-
 /**
  * The released beam, its unit states and its flexibility matrix
  *
@@ -31,11 +34,8 @@ export const placeOf = (beam: Beam, redundant: Redundant): number =>
  * is computed and mirrored (Maxwell). Fails with SingularMatrix, which names the row, where the redundants repeat one
  * another to within the digits carried; a set that leaves a mechanism is refused before, by checkRedundants.
  */
-export function flexibilityOf(
-  beam: Beam,
-  chosen: readonly Redundant[] = defaultRedundants(beam),
-): Flexibility {
-  const redundants = chosen.map((redundant) => placeRedundant(beam, redundant));
+export function flexibilityOf(beam: Beam, chosen?: readonly Redundant[]): Flexibility {
+  const redundants = chosen?.map((r) => placeRedundant(beam, r)) ?? defaultRedundants(beam);
   const releases = redundants.flatMap((r) => (r.component === 'moment' ? [r.at] : []));
   const mesh = meshOf(beam, releases);
   const joints = new Set([0, beam.length, ...beam.supports.map(({ at }) => at), ...beam.hinges, ...releases]);
@@ -54,17 +54,14 @@ function flexibilityRows(
   reactions: readonly Reaction[],
   units: readonly UnitState[],
 ): LowerRow[] {
-  const springs = reactions.flatMap(({ restraint }, index) =>
-    restraint.kind === 'spring' ? [{ index, compliance: Wide.ONE.over(restraint.stiffness) }] : [],
-  );
+  const compliances = new Map<number, Wide>();
+  reactions.forEach(({ restraint }, c) => {
+    if (restraint.kind === 'spring') compliances.set(c, Wide.ONE.over(restraint.stiffness));
+  });
   return units.map((unit, i) => {
-    const row = units
-      .slice(0, i + 1)
-      .map((other, j) =>
-        flexibilityBetween(members, springs, unit, other).plus(
-          j === i ? ownCompliance(beam, redundants[i]!) : Wide.ZERO,
-        ),
-      );
+    const bends = bendsOf(members, unit);
+    const row = units.slice(0, i + 1).map((other) => flexibilityBetween(unit, bends, other, compliances));
+    row[i] = row[i]!.plus(ownCompliance(beam, redundants[i]!));
     const first = row.findIndex(({ hi }) => hi !== 0);
     return { first: first < 0 ? i : first, entries: row.slice(first < 0 ? i : first) };
   });

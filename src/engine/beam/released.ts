@@ -1,12 +1,14 @@
 import { Sum, Wide } from '../linear/index';
 import {
   type Beam,
+  type Frame,
   findMotion,
   frameOf,
   type MovingPart,
   type Redundant,
   type Restraint,
   riseOf,
+  without,
 } from '../model/index';
 import type { Actions } from './actions';
 import type { Mesh } from './mesh';
@@ -29,11 +31,12 @@ export type Reaction = {
  * The same movements turn given movements of the supports into the rigid movement of the beam.
  */
 export function reactionsWithout(beam: Beam, released: readonly Redundant[]): Reaction[] {
+  const frame = frameOf(beam, released);
   return beam.supports.flatMap((support, i) =>
     (['vertical', 'rotation'] as const).flatMap((component): Reaction[] => {
       const restraint = support[component];
       if (restraint.kind === 'free' || isReleased(released, i, component)) return [];
-      const motion = unitMotion(beam, released, { support: i, component });
+      const motion = unitMotion(frame, { support: i, component }, support.at);
       return [{ support: i, component, at: support.at, restraint, motion }];
     }),
   );
@@ -45,16 +48,19 @@ export function isReleased(released: readonly Redundant[], support: number, comp
 }
 
 function unitMotion(
-  beam: Beam,
-  released: readonly Redundant[],
+  frame: Frame,
   reaction: Extract<Redundant, { support: number }>,
+  at: number,
 ): MovingPart[] {
-  const parts = findMotion(frameOf(beam, [...released, reaction]));
+  const parts = findMotion(without(frame, reaction, at));
   if (!parts) throw new RangeError('the released beam is not statically determinate');
-  const { at } = beam.supports[reaction.support]!;
   const moved = reaction.component === 'vertical' ? riseAt(parts, at) : turnAt(parts, at, 'left');
   return parts.map((part) => ({ ...part, amount: part.amount.over(moved) }));
 }
+
+/** Whether the movement is one at x. */
+export const reaches = (parts: readonly MovingPart[], x: number): boolean =>
+  parts[0]!.from <= x && x <= parts.at(-1)!.to;
 
 /** Vertical movement at x; the parts meet in the hinges, and what is beside them stays. */
 export function riseAt(parts: readonly MovingPart[], x: number): Wide {

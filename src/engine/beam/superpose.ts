@@ -1,8 +1,8 @@
 import { Sum, settled, Wide } from '../linear/index';
-import type { Restraint } from '../model/index';
+import { placeOf, type Restraint } from '../model/index';
 import type { Actions } from './actions';
 import { diagramsOf } from './diagrams';
-import { type Flexibility, placeOf } from './flexibility';
+import type { Flexibility } from './flexibility';
 import { floorOf } from './scale';
 import { curveOf, forcesOf, type Holding, placedCurve } from './state';
 import type { Diagrams, Reaction } from './types';
@@ -42,14 +42,15 @@ export function superpose(flexibility: Flexibility, superposed: Superposed): Bea
 
 /** R = R₀ + Σ X r, of the reactions of the released beam. */
 function totalReactions({ units }: Flexibility, { released, values }: Superposed): Wide[] {
-  return released.map((value, c) => {
+  const sums = released.map((value) => {
     const sum = new Sum();
     sum.add(value);
-    units.forEach(({ reactions }, i) => {
-      if (reactions[c]!.hi !== 0) sum.add(reactions[c]!.times(values[i]!));
-    });
-    return sum.total();
+    return sum;
   });
+  units.forEach(({ reactions }, i) => {
+    for (const [c, reaction] of reactions) sums[c]!.add(reaction.times(values[i]!));
+  });
+  return sums.map((sum) => sum.total());
 }
 
 /** How far a restraint lets its point go while it carries `force`: where it is held, less what its spring gives. */

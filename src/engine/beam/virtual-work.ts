@@ -1,7 +1,7 @@
 import { CANCELLED, largest, type Sum, settled, Wide } from '../linear/index';
 import type { Redundant } from '../model/index';
 import type { Mesh } from './mesh';
-import { type Reaction, riseAt, turnAt } from './released';
+import { type Reaction, reaches, riseAt, turnAt } from './released';
 import type { Curve } from './state';
 
 /** A stretch between neighbouring supports, hinges and cuts, where the moment of a unit redundant is a straight line. */
@@ -38,11 +38,16 @@ export function membersOf(mesh: Mesh, joints: readonly number[]): Member[] {
   });
 }
 
-/**
- * The released beam under a unit value of one redundant: its reactions, and on each member from `first` to `last` the
- * moment at the left end and the shear; elsewhere it carries nothing.
- */
-export type UnitState = { reactions: Wide[]; moment: Wide[]; shear: Wide[]; first: number; last: number };
+/** The released beam under a unit value of one redundant. */
+export type UnitState = {
+  /** By their numbers, those of the released beam's reactions that it causes. */
+  reactions: ReadonlyMap<number, Wide>;
+  /** The members that carry it, and the moment at the left end and the shear of each from `first` on. */
+  first: number;
+  last: number;
+  moment: readonly Wide[];
+  shear: readonly Wide[];
+};
 
 export function unitState(
   mesh: Mesh,
@@ -51,15 +56,13 @@ export function unitState(
   redundant: Redundant,
   at: number,
 ): UnitState {
-  const values = reactions.map(({ motion }) => {
-    if (redundant.component === 'vertical') return riseAt(motion, at).negated();
-    if (redundant.component === 'rotation') return turnAt(motion, at, 'left').negated();
-    // A sagging pair turns what is left of the cut anticlockwise, and what is right of it clockwise.
-    return turnAt(motion, at, 'right').minus(turnAt(motion, at, 'left'));
-  });
+  const values = new Map<number, Wide>();
   const [up, turn] = [new Map<number, Wide>(), new Map<number, Wide>()];
-  reactions.forEach(({ at: place, component }, c) => {
-    (component === 'vertical' ? up : turn).set(mesh.index.get(place)!, values[c]!);
+  reactions.forEach(({ at: place, component, motion }, c) => {
+    const value = reaches(motion, at) ? withstanding(motion, redundant, at) : Wide.ZERO;
+    if (value.hi === 0) return;
+    values.set(c, value);
+    (component === 'vertical' ? up : turn).set(mesh.index.get(place)!, value);
   });
   if (redundant.component !== 'moment') {
     (redundant.component === 'vertical' ? up : turn).set(mesh.index.get(at)!, Wide.ONE);
@@ -67,50 +70,79 @@ export function unitState(
   return { reactions: values, ...lines(members, up, turn) };
 }
 
+/** The reaction to a unit value of the redundant at `at`, from the movement that the reaction prevents. */
+function withstanding(motion: Reaction['motion'], { component }: Redundant, at: number): Wide {
+  if (component === 'vertical') return riseAt(motion, at).negated();
+  if (component === 'rotation') return turnAt(motion, at, 'left').negated();
+  // A sagging pair turns what is left of the cut anticlockwise, and what is right of it clockwise.
+  return turnAt(motion, at, 'right').minus(turnAt(motion, at, 'left'));
+}
+
 type AtPoint = ReadonlyMap<number, Wide>;
 
-/** Shear and moment of a beam that is loaded at its joints only, from the left end. */
+/** Shear and moment of a beam that is loaded at its joints only and is in equilibrium, from the first of them to the last. */
 function lines(members: readonly Member[], up: AtPoint, turn: AtPoint) {
-  let [shear, moment] = [Wide.ZERO, Wide.ZERO];
+  let [V, M] = [Wide.ZERO, Wide.ZERO];
   const shears: Wide[] = [];
   const moments: Wide[] = [];
-  for (const { from, length } of members) {
-    shear = shear.plus(up.get(from) ?? Wide.ZERO);
-    moment = moment.minus(turn.get(from) ?? Wide.ZERO);
-    shears.push(shear);
-    moments.push(moment);
-    moment = moment.plus(shear.times(length));
+  const acting = [...up.keys(), ...turn.keys()];
+  const [left, right] = [Math.min(...acting), Math.max(...acting)];
+  const start = members.findIndex(({ from }) => from >= left);
+  for (let m = start; m < members.length && members[m]!.from < right; m++) {
+    const { from, length } = members[m]!;
+    V = V.plus(up.get(from) ?? Wide.ZERO);
+    M = M.minus(turn.get(from) ?? Wide.ZERO);
+    shears.push(V);
+    moments.push(M);
+    M = M.plus(V.times(length));
   }
   // What is left of a sum that cancels is exactly nothing: so a unit state ends where it ends.
-  const cleared = {
-    shear: settled(shears, CANCELLED * largest(shears)),
-    moment: settled(moments, CANCELLED * largest(moments)),
+  const shear = settled(shears, CANCELLED * largest(shears));
+  const moment = settled(moments, CANCELLED * largest(moments));
+  const carries = shear.map((v, m) => v.hi !== 0 || moment[m]!.hi !== 0);
+  const [skipped, last] = [Math.max(0, carries.indexOf(true)), carries.lastIndexOf(true)];
+  return {
+    first: start + skipped,
+    last: start + last,
+    shear: shear.slice(skipped),
+    moment: moment.slice(skipped),
   };
-  const carries = members.map((_, m) => cleared.shear[m] !== Wide.ZERO || cleared.moment[m] !== Wide.ZERO);
-  return { ...cleared, first: Math.max(0, carries.indexOf(true)), last: carries.lastIndexOf(true) };
 }
+
+/** What a unit state does to the members that carry it: ∫ m/EI dx, and ∫ m s/EI dx + ∫ v/GA dx with s from the left end. */
+export type Bend = { turn: Wide; drop: Wide };
+
+/** Exact: m = M + V s on every member, and the integrals of 1, s and s² over EI are known. */
+export const bendsOf = (members: readonly Member[], { first, moment, shear }: UnitState): Bend[] =>
+  moment.map((M, i) => {
+    const { constant, linear, quadratic } = members[first + i]!;
+    const V = shear[i]!;
+    return {
+      turn: M.times(constant).plus(V.times(linear)),
+      drop: M.times(linear).plus(V.times(quadratic)),
+    };
+  });
 
 /**
  * f_ij = ∫ m_i m_j/EI dx + ∫ v_i v_j/GA dx + Σ r_i r_j/k
  *
- * Exact: m = M + V s on every member, and the integrals of 1, s and s² over EI are known.
+ * of two unit states, from the bends of the first. 1/k of the springs among the reactions is by the reactions' numbers.
  */
 export function flexibilityBetween(
-  members: readonly Member[],
-  springs: readonly { index: number; compliance: Wide }[],
   a: UnitState,
+  bends: readonly Bend[],
   b: UnitState,
+  compliances: ReadonlyMap<number, Wide>,
 ): Wide {
   let total = Wide.ZERO;
   for (let m = Math.max(a.first, b.first); m <= Math.min(a.last, b.last); m++) {
-    const { constant, linear, quadratic } = members[m]!;
-    const [M, V] = [b.moment[m]!, b.shear[m]!];
-    total = total
-      .plus(a.moment[m]!.times(M.times(constant).plus(V.times(linear))))
-      .plus(a.shear[m]!.times(M.times(linear).plus(V.times(quadratic))));
+    const { turn, drop } = bends[m - a.first]!;
+    total = total.plus(b.moment[m - b.first]!.times(turn)).plus(b.shear[m - b.first]!.times(drop));
   }
-  for (const { index, compliance } of springs) {
-    total = total.plus(a.reactions[index]!.times(b.reactions[index]!).times(compliance));
+  if (compliances.size === 0) return total;
+  for (const [c, reaction] of a.reactions) {
+    const [other, compliance] = [b.reactions.get(c), compliances.get(c)];
+    if (other && compliance) total = total.plus(reaction.times(other).times(compliance));
   }
   return total;
 }
@@ -125,7 +157,7 @@ export function addWorkOn(sum: Sum, members: readonly Member[], unit: UnitState,
   for (let m = unit.first; m <= unit.last; m++) {
     const { from, to, length } = members[m]!;
     const [turn, drop] = [curve.rotation[to]!, curve.deflection[to]!];
-    sum.add(unit.moment[m]!.times(turn.minus(curve.rotation[from]!)));
-    sum.add(unit.shear[m]!.times(turn.times(length).minus(drop.minus(curve.deflection[from]!))));
+    sum.add(unit.moment[m - unit.first]!.times(turn.minus(curve.rotation[from]!)));
+    sum.add(unit.shear[m - unit.first]!.times(turn.times(length).minus(drop.minus(curve.deflection[from]!))));
   }
 }

@@ -1,3 +1,4 @@
+export { defaultRedundants, MOST_REACHING } from './default-redundants';
 export { type LetteredSupport, letteredSupports, supportLetter } from './letters';
 export { describeMotion, releaseMechanism } from './motion';
 export { readBeam } from './read';
@@ -5,11 +6,10 @@ export { COINCIDENT } from './reader';
 export {
   admissibleSets,
   checkRedundants,
-  defaultRedundants,
   eligibleRedundants,
   placeRedundant,
 } from './redundants';
 export { type Span, spansOf } from './spans';
-export { findMotion, frameOf, type MovingPart, riseOf } from './stability';
+export { type Frame, findMotion, frameOf, type MovingPart, placeOf, riseOf, without } from './stability';
 export * from './types';
 export { metres, nameRedundant, nameSupport } from './words';

@@ -1,13 +1,8 @@
 import { describe, expect, test } from 'vitest';
+import { defaultRedundants } from './default-redundants';
 import { releaseMechanism } from './motion';
 import { readBeam } from './read';
-import {
-  admissibleSets,
-  checkRedundants,
-  defaultRedundants,
-  eligibleRedundants,
-  placeRedundant,
-} from './redundants';
+import { admissibleSets, checkRedundants, eligibleRedundants, placeRedundant } from './redundants';
 import type { Beam, BeamDocument, Redundant } from './types';
 import { nameRedundant } from './words';
 

@@ -1,13 +1,10 @@
 import { describeMotion, releaseMechanism } from './motion';
 import { COINCIDENT } from './reader';
-import { findMotion, frameOf } from './stability';
+import { type Frame, findMotion, frameOf, placeOf, without } from './stability';
 import type { Beam, Fault, Redundant, Restraint } from './types';
 import { metres, nameRedundant, nameSupport } from './words';
 
-const isStable = (beam: Beam, released: readonly Redundant[]): boolean =>
-  findMotion(frameOf(beam, released)) === null;
-
-const holds = (restraint: Restraint): boolean => restraint.kind !== 'free';
+export const holds = (restraint: Restraint): boolean => restraint.kind !== 'free';
 
 /** Every reaction component, springs included, in the order of the supports; then the moment over interior supports. */
 function components(beam: Beam): Redundant[] {
@@ -30,47 +27,25 @@ function components(beam: Beam): Redundant[] {
  * and the support does not hold rotation.
  */
 export function eligibleRedundants(beam: Beam): Redundant[] {
-  return beam.degree === 0 ? [] : components(beam).filter((redundant) => isStable(beam, [redundant]));
-}
-
-/**
- * The beam's own choice: support moments first, by position, since simple spans keep the flexibility matrix banded and
- * well conditioned; then vertical reactions, inner supports before outer ones. A spring softer than the whole beam goes
- * before all others, since what rests on it would make every flexibility alike. Always admissible.
- */
-export function defaultRedundants(beam: Beam): Redundant[] {
-  const middle = beam.length / 2;
-  const place = (r: Redundant) => (r.component === 'moment' ? r.at : beam.supports[r.support]!.at);
-  const rank = (r: Redundant) => {
-    if (r.component !== 'vertical') return place(r);
-    return isSoft(beam, beam.supports[r.support]!.vertical) ? -1 : beam.length + Math.abs(place(r) - middle);
-  };
-  const chosen: Redundant[] = [];
-  for (const redundant of eligibleRedundants(beam).sort((a, b) => rank(a) - rank(b))) {
-    if (chosen.length === beam.degree) break;
-    if (isStable(beam, [...chosen, redundant])) chosen.push(redundant);
-  }
-  return chosen.sort((a, b) => place(a) - place(b));
-}
-
-function isSoft({ length, segments }: Beam, restraint: Restraint): boolean {
-  const stiffest = Math.max(...segments.map(({ ei }) => ei));
-  return restraint.kind === 'spring' && restraint.stiffness * length ** 3 < stiffest;
+  if (beam.degree === 0) return [];
+  const frame = frameOf(beam);
+  return components(beam).filter((r) => findMotion(without(frame, r, placeOf(beam, r))) === null);
 }
 
 /** Every admissible set of eligible redundants: those whose release, all at once, leaves the beam stable. */
 export function* admissibleSets(beam: Beam): Generator<Redundant[]> {
   const eligible = eligibleRedundants(beam);
-  function* extend(chosen: Redundant[], next: number): Generator<Redundant[]> {
+  function* extend(chosen: Redundant[], frame: Frame, next: number): Generator<Redundant[]> {
     if (chosen.length === beam.degree) yield chosen;
     const missing = beam.degree - chosen.length;
     for (let i = next; missing > 0 && i + missing <= eligible.length; i++) {
-      const set = [...chosen, eligible[i]!];
+      const redundant = eligible[i]!;
+      const less = without(frame, redundant, placeOf(beam, redundant));
       // What leaves a mechanism leaves one with more released as well.
-      if (isStable(beam, set)) yield* extend(set, i + 1);
+      if (findMotion(less) === null) yield* extend([...chosen, redundant], less, i + 1);
     }
   }
-  yield* extend([], 0);
+  yield* extend([], frameOf(beam), 0);
 }
 
 /** The redundant with its position brought to that of a point of the beam which it coincides with. */

@@ -16,6 +16,10 @@ export type MovingPart = { from: number; to: number; about: number | null; amoun
 type Freedom = 'held' | 'slides' | 'free' | { about: number };
 type Body = { from: number; freedom: Freedom };
 
+/** Where a redundant acts. */
+export const placeOf = ({ supports }: Pick<Beam, 'supports'>, redundant: Redundant): number =>
+  redundant.component === 'moment' ? redundant.at : supports[redundant.support]!.at;
+
 /** The beam's frame, or that of the beam without the given redundants. */
 export function frameOf(beam: Holding, released: readonly Redundant[] = []): Frame {
   const joints = new Map<number, Joint>();
@@ -29,11 +33,23 @@ export function frameOf(beam: Holding, released: readonly Redundant[] = []): Fra
     joint(support.at).rotation = support.rotation.kind !== 'free';
   }
   for (const at of beam.hinges) joint(at).hinge = true;
-  for (const redundant of released) {
-    if (redundant.component === 'moment') joint(redundant.at).hinge = true;
-    else joint(beam.supports[redundant.support]!.at)[redundant.component] = false;
-  }
-  return { length: beam.length, joints: [...joints.values()].sort((a, b) => a.at - b.at) };
+  const frame = { length: beam.length, joints: [...joints.values()].sort((a, b) => a.at - b.at) };
+  return released.reduce<Frame>(
+    (left, redundant) => without(left, redundant, placeOf(beam, redundant)),
+    frame,
+  );
+}
+
+/** The frame without one more redundant, which acts at `at`; the same frame where that is released already. */
+export function without(frame: Frame, { component }: Redundant, at: number): Frame {
+  const { length, joints } = frame;
+  const next = joints.findIndex((joint) => joint.at >= at);
+  const i = next < 0 ? joints.length : next;
+  const known = joints[i]?.at === at ? joints[i] : undefined;
+  const joint = known ?? { at, vertical: false, rotation: false, hinge: false };
+  const [key, value] = component === 'moment' ? (['hinge', true] as const) : ([component, false] as const);
+  if (joint[key] === value) return frame;
+  return { length, joints: joints.toSpliced(i, known ? 1 : 0, { ...joint, [key]: value }) };
 }
 
 /**

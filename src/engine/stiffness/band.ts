@@ -28,14 +28,14 @@ export class SymmetricBand {
   }
 
   get(i: number, j: number): Wide {
-    const [row, column] = i >= j ? [i, j] : [j, i];
-    const k = column - row + HALF_BANDWIDTH;
-    return k < 0 ? Wide.ZERO : this.rows[row]![k]!;
+    if (i < j) return this.get(j, i);
+    const k = j - i + HALF_BANDWIDTH;
+    return k < 0 ? Wide.ZERO : this.rows[i]![k]!;
   }
 
   set(i: number, j: number, value: Wide): void {
-    const [row, column] = i >= j ? [i, j] : [j, i];
-    this.rows[row]![column - row + HALF_BANDWIDTH] = value;
+    if (i < j) this.set(j, i, value);
+    else this.rows[i]![j - i + HALF_BANDWIDTH] = value;
   }
 
   add(i: number, j: number, value: Wide): void {

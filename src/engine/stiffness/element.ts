@@ -133,10 +133,10 @@ export function elementStiffness({ length: h, ei, phi }: Element): Wide[][] {
  *   curvature:  moment ±EIκ
  */
 export function fixedEndForces({ length: h, ei, phi, load, curvature }: Element): Wide[] {
-  const mean = load[0].plus(load[1]).over(2);
-  const change = load[1].minus(load[0]).over(2);
+  const mean = load[0].plus(load[1]).times(0.5);
+  const change = load[1].minus(load[0]).times(0.5);
   const stiffened = Wide.ONE.plus(phi);
-  const force = mean.times(h).over(2);
+  const force = mean.times(h).times(0.5);
   const moment = mean.times(h).times(h).over(12).plus(ei.times(curvature));
   const forceOfChange = change
     .times(h)
@@ -156,19 +156,19 @@ export function stateAt(element: Element, start: SectionState, s: Wide): Section
   const { ei, load, length, curvature, shearFlexibility } = element;
   const rate = load[1].minus(load[0]).over(length);
   // V, M − M₀ and the bending parts of ψ and v: the load integrated once, twice, three and four times
-  const shear = polynomial(s, [start.shear, load[0].negated(), rate.over(-2)]);
-  const gain = polynomial(s, [Wide.ZERO, start.shear, load[0].over(-2), rate.over(-6)]);
+  const shear = polynomial(s, [start.shear, load[0].negated(), rate.times(-0.5)]);
+  const gain = polynomial(s, [Wide.ZERO, start.shear, load[0].times(-0.5), rate.over(-6)]);
   const bend = polynomial(s, [
     Wide.ZERO,
     start.moment,
-    start.shear.over(2),
+    start.shear.times(0.5),
     load[0].over(-6),
     rate.over(-24),
   ]);
   const sag = polynomial(s, [
     Wide.ZERO,
     Wide.ZERO,
-    start.moment.over(2),
+    start.moment.times(0.5),
     start.shear.over(6),
     load[0].over(-24),
     rate.over(-120),
@@ -180,7 +180,7 @@ export function stateAt(element: Element, start: SectionState, s: Wide): Section
     deflection: start.deflection
       .plus(start.rotation.times(s))
       .plus(sag.over(ei))
-      .plus(curvature.times(s).times(s).over(2))
+      .plus(curvature.times(s).times(s).times(0.5))
       .minus(gain.times(shearFlexibility)),
   };
 }

@@ -1,18 +1,17 @@
-import { ContinuousBeam, prepareFast } from '@/engine/continuous/index';
+import { ContinuousBeam } from '@/engine/continuous/index';
 import { fastSolver, type SolveMoved, solveWide } from '@/engine/influence/index';
-import type { Beam, Reading } from '@/engine/model/index';
+import { type Beam, MOST_REACHING, type Reading } from '@/engine/model/index';
 import { pointsOf } from '@/engine/stiffness/index';
-import type { Prepare } from '@/engine/vibration/index';
 
 /** What a request may cost, and up to where 32 digits are worth their time; each about 0.4 ms. */
 const MOST = 2500;
 const LITTLE = 100;
-/** Degree whose equations take as long as all the rest of a solution, squared. */
+/** Redundants that reach over the beam, whose equations take as long as all the rest of a solution, squared. */
 const DENSE = 6000;
 
 /**
  * What solves so many influence lines of a beam: 32 digits where that takes little, doubles for more; or why it takes
- * too long, as with hundreds of supports and hinges.
+ * too long, as with the many lines of hundreds of supports and hinges.
  */
 export function lineSolver(beam: Beam, lines = 1): Reading<SolveMoved> {
   const { points, cost } = workOf(beam, lines);
@@ -22,21 +21,11 @@ export function lineSolver(beam: Beam, lines = 1): Reading<SolveMoved> {
   return { ok: true, value: fastSolver({ prove: lines * points <= MOST, solve }) };
 }
 
-/** The same of the one solution that a frequency asks for, whose deflection is an estimate only. */
-export function sagSolver(beam: Beam): Reading<Prepare> {
-  const check = workOf(beam, 1).cost <= MOST;
-  if (!check && !isContinuous(beam)) return tooLong;
-  const value: Prepare = (loaded) => {
-    const fast = prepareFast(loaded);
-    return { solve: (loads, options) => fast.solve(loads, { ...options, check }) };
-  };
-  return { ok: true, value };
-}
-
 /** The points of the beam, and what its solutions in 32 digits cost: the points, and the equations of its redundants. */
 function workOf(beam: Beam, solutions: number): { points: number; cost: number } {
   const points = pointsOf(unloaded(beam)).length;
-  return { points, cost: solutions * points * (1 + beam.degree ** 2 / DENSE) };
+  const reaching = beam.degree > MOST_REACHING ? 0 : beam.degree;
+  return { points, cost: solutions * points * (1 + reaching ** 2 / DENSE) };
 }
 
 const unloaded = (beam: Beam): Beam => ({ ...beam, loads: [] });

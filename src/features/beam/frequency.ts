@@ -1,4 +1,5 @@
 import { z } from 'zod';
+import { prepareFast } from '@/engine/continuous/index';
 import type { Fault, Reading } from '@/engine/model/index';
 import {
   type FirstFrequency,
@@ -8,7 +9,6 @@ import {
   totalMass,
 } from '@/engine/vibration/index';
 import { read } from '@/lib/read';
-import { sagSolver } from './choose-solver';
 import { type ReadBeam, readWithRedundants, solveFrequency } from './further';
 import { type Outcome, toOutcome } from './further-answer';
 import { group, LIMITS, position, quantity, solveRequest } from './request';
@@ -78,9 +78,7 @@ export function frequencyDocument(request: FrequencyRequest): Outcome<FrequencyA
     );
     const stretches = own === undefined ? distributed : [...distributed, alongAll(given.length, own)];
     const masses = joinMasses({ distributed: stretches, lumped }, weights.masses);
-    const prepare = sagSolver(given);
-    if (!prepare.ok) return prepare;
-    const found = solveFrequency({ beam: given }, masses, prepare.value);
+    const found = solveFrequency({ beam: given }, masses, prepareFast);
     return found.ok ? { ok: true, value: toAnswer(found.value, masses, weights.leftOut) } : found;
   }
 }

@@ -1,5 +1,5 @@
 import { z } from 'zod';
-import { SUPPORT_KINDS } from '@/engine/model/index';
+import { MOST_REACHING, SUPPORT_KINDS } from '@/engine/model/index';
 import { DIMENSION_WORDS, type DimensionName, readQuantity } from '@/engine/quantity/index';
 
 /** Sizes beyond which a request is no beam of a building, and would keep others waiting. */
@@ -9,8 +9,8 @@ export const LIMITS = {
   segments: 400,
   loads: 2000,
   stations: 5001,
-  /** Chosen ones: each may reach over the whole beam, so that the work grows with their cube. */
-  redundants: 120,
+  /** Chosen ones. */
+  redundants: MOST_REACHING,
   combinations: 200,
   patterns: 60,
 } as const;

@@ -1,6 +1,6 @@
+import { horner, type UnitRoots, WIDTH } from '../polynomial/index';
 import type { Cases, Sense } from './cases';
 import { type Arrangement, type Curves, dot, readFactors } from './curves';
-import { horner, type UnitRoots, WIDTH } from './roots';
 
 /** Values nearer to an extreme than this part of the largest magnitude attain it, as in a solution's own extremes. */
 const TIE = 1e-9;

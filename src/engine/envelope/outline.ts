@@ -1,8 +1,7 @@
-import { type Piecewise, piecewise } from '../polynomial/index';
+import { horner, type Piecewise, piecewise, UnitRoots } from '../polynomial/index';
 import type { Cases, Sense } from './cases';
 import type { Curves } from './curves';
 import { PieceEnvelope } from './piece';
-import { horner, UnitRoots } from './roots';
 
 /** Part of a piece that is too short to draw, or to tell one polynomial from another on. */
 const SLIVER = 1e-9;

@@ -1,6 +1,6 @@
+import { horner, type UnitRoots, WIDTH } from '../polynomial/index';
 import { type Cases, type Sense, shareOf } from './cases';
 import type { Curves } from './curves';
-import { horner, type UnitRoots, WIDTH } from './roots';
 
 /**
  * The envelope of a combination within one piece. Between the zeros of the spans' shares the same spans are adverse

@@ -1,10 +1,9 @@
-import { settle } from '../polynomial/index';
+import { settle, UnitRoots } from '../polynomial/index';
 import { AttainedPlaces } from './attained';
 import { type Adverse, NOTHING, type Sense } from './cases';
 import { type Curves, valuesAt } from './curves';
 import { GroupSums } from './group-sums';
 import { PieceMaximum } from './piece';
-import { UnitRoots } from './roots';
 import type { Range } from './types';
 
 /** An extreme of an envelope: its value, and every position where the arrangement that gives it attains it. */

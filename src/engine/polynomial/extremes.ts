@@ -1,5 +1,5 @@
 import { differentiate, evaluatePiece, pieceCount } from './piecewise';
-import { rootsOfPiece } from './roots';
+import { rootsOf } from './roots';
 import type { Extreme, Piecewise } from './types';
 
 /** Values nearer to an extreme than this part of the largest magnitude attain it. */
@@ -35,7 +35,7 @@ export function extremes(p: Piecewise): { max: Extreme; min: Extreme } {
 
 /** Ends and those turning points that may be extremes, piece by piece. */
 function candidatesOf(p: Piecewise): Candidate[] {
-  const derivative = differentiate(p);
+  const turnsIn = rootsOf(differentiate(p));
   const candidateAt = (k: number, x: number): Candidate => ({
     x,
     value: evaluatePiece(p, k, x - p.breaks[k]!),
@@ -48,7 +48,7 @@ function candidatesOf(p: Piecewise): Candidate[] {
   const bounds = new Float64Array(p.degree + 1);
   pieces.forEach((piece, k) => {
     if (!mayPass(p, k, ends, bounds)) return;
-    const turns = rootsOfPiece(derivative, k).map((x) => candidateAt(k, x));
+    const turns = turnsIn(k).map((x) => candidateAt(k, x));
     piece.splice(1, 0, ...turns);
   });
   const largest = largestOf(pieces.flat());

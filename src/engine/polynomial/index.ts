@@ -15,3 +15,4 @@ export {
 } from './piecewise';
 export { signChanges } from './sign-changes';
 export type { Extreme, Piecewise } from './types';
+export { horner, UnitRoots, WIDTH } from './unit-roots';

@@ -1,72 +1,27 @@
 import type { Piecewise } from './types';
-
-const STEPS = 200; // bisection alone needs 60; Newton's steps are extra and seldom more than five
+import { horner, UnitRoots } from './unit-roots';
 
 /**
- * The positions in piece k, ends included, where p is zero; none where p is zero throughout.
- *
- * Between two roots of its derivative a polynomial is monotone, so each sign change there brackets one root, which
- * Newton's method, kept inside the bracket by bisection, finds to rounding. Roots without a change of sign are found
- * where the derivative's root gives exactly 0. Works on t = s/h in [0, 1], so that pieces of any length are alike.
+ * The positions in the pieces of p, ends included, where it is zero: a function of the piece's number; none where p is
+ * zero throughout the piece. Roots are found in t = s/h in (0, 1), so that pieces of any length are alike.
  */
-export function rootsOfPiece(p: Piecewise, k: number): number[] {
-  const from = p.breaks[k]!;
-  const length = p.breaks[k + 1]! - from;
-  const scaled: number[] = [];
-  let power = 1;
-  for (let j = 0; j <= p.degree; j++) {
-    scaled.push(p.coefficients[k * (p.degree + 1) + j]! * power);
-    power *= length;
-  }
-  return unitRoots(scaled).map((t) => (t === 1 ? p.breaks[k + 1]! : from + t * length));
-}
-
-/** Roots in [0, 1], ascending, of Σ a[j] t^j. */
-function unitRoots(a: readonly number[]): number[] {
-  let degree = a.length - 1;
-  while (degree > 0 && a[degree] === 0) degree--;
-  if (degree === 0) return [];
-  const derivative = a.slice(1, degree + 1).map((c, j) => c * (j + 1));
-  const turns = [0, ...unitRoots(derivative).filter((t) => t > 0 && t < 1), 1];
-  const values = turns.map((t) => horner(a, degree, t));
-  const roots: number[] = [];
-  turns.forEach((t, i) => {
-    if (values[i] === 0) roots.push(t);
-    const next = values[i + 1];
-    if (next !== undefined && values[i]! * next < 0) {
-      roots.push(bracketedRoot(a, derivative, degree, t, turns[i + 1]!));
+export function rootsOf({ breaks, degree, coefficients }: Piecewise): (k: number) => number[] {
+  const inside = new UnitRoots();
+  const scaled = new Float64Array(degree + 1);
+  return (k) => {
+    const from = breaks[k]!;
+    const to = breaks[k + 1]!;
+    let power = 1;
+    for (let j = 0; j <= degree; j++) {
+      scaled[j] = coefficients[k * (degree + 1) + j]! * power;
+      power *= to - from;
     }
-  });
-  return roots;
-}
-
-function bracketedRoot(
-  a: readonly number[],
-  derivative: readonly number[],
-  degree: number,
-  from: number,
-  to: number,
-): number {
-  const rising = horner(a, degree, from) < 0;
-  let low = from;
-  let high = to;
-  let t = (low + high) / 2;
-  for (let step = 0; step < STEPS; step++) {
-    const value = horner(a, degree, t);
-    if (value === 0) return t;
-    if (value < 0 === rising) low = t;
-    else high = t;
-    const newton = t - value / horner(derivative, degree - 1, t);
-    // Every third step bisects, so that a bracket that Newton closes from one side only is closed all the same.
-    const next = step % 3 < 2 && newton > low && newton < high ? newton : (low + high) / 2;
-    if (next === t || next <= low || next >= high) return next;
-    t = next;
-  }
-  return t;
-}
-
-function horner(a: readonly number[], degree: number, t: number): number {
-  let value = 0;
-  for (let j = degree; j >= 0; j--) value = value * t + a[j]!;
-  return value;
+    if (scaled.every((a) => a === 0)) return [];
+    const found: number[] = [];
+    if (scaled[0] === 0) found.push(from);
+    const count = inside.find(scaled, degree);
+    for (let i = 0; i < count; i++) found.push(from + inside.roots[i]! * (to - from));
+    if (horner(scaled, degree, 1) === 0) found.push(to);
+    return found;
+  };
 }

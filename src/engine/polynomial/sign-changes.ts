@@ -1,6 +1,6 @@
 import { COINCIDENT, magnitude } from './extremes';
 import { evaluatePiece, pieceCount } from './piecewise';
-import { rootsOfPiece } from './roots';
+import { rootsOf } from './roots';
 import type { Piecewise } from './types';
 
 /** A stretch where |p| stays below this part of its largest value is zero: the sign there would be rounding's. */
@@ -26,8 +26,9 @@ export function signChanges(p: Piecewise): number[] {
 
 function stretchesOf(p: Piecewise): Stretch[] {
   const nothing = NOTHING * magnitude(p);
+  const rootsIn = rootsOf(p);
   return Array.from({ length: pieceCount(p) }, (_, k) => {
-    const cuts = [...new Set([p.breaks[k]!, ...rootsOfPiece(p, k), p.breaks[k + 1]!])];
+    const cuts = [...new Set([p.breaks[k]!, ...rootsIn(k), p.breaks[k + 1]!])];
     return cuts.slice(1).map((to, i) => stretch(p, k, cuts[i]!, to, nothing));
   }).flat();
 }

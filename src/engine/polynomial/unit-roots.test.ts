@@ -1,6 +1,6 @@
 import fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
-import { horner, UnitRoots } from './roots';
+import { horner, UnitRoots } from './unit-roots';
 
 /** Coefficients of scale · Π (t − root), lowest power first. */
 const product = (roots: readonly number[], scale: number): Float64Array =>

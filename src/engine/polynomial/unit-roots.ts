@@ -1,11 +1,11 @@
 const STEPS = 200; // bisection alone needs 60; Newton's steps are extra and seldom more than five
-const DEGREE = 5;
+const DEGREE = 5; // of a deflection
 /** Coefficients of a polynomial of the highest degree. */
 export const WIDTH: number = DEGREE + 1;
 
 /**
- * Roots in the open interval (0, 1) of polynomials up to the fifth degree, into buffers that are kept, since an
- * envelope looks for many: closed forms up to the second degree; beyond, one root between neighbouring turning points
+ * Roots in the open interval (0, 1) of polynomials up to the fifth degree, into buffers that are kept, since
+ * envelopes and extremes look for many: closed forms up to the second degree; beyond, one root between neighbouring turning points
  * of unlike sign, by Newton's method kept in its bracket. Roots without a change of sign are found where they are exact.
  */
 export class UnitRoots {

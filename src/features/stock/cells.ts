@@ -77,8 +77,7 @@ export function readLengths(cell: string, { mark, lengthUnit }: ReadAs): Cell<nu
   const lengths: number[] = [];
   for (const part of parts) {
     const read = readQuantity(part, 'length', { unit: lengthUnit });
-    if (!read.ok)
-      return bad('lengths', text, 'not_a_number', `“${part.slice(0, SHOWN)}” is no length. ${read.message}`);
+    if (!read.ok) return bad('lengths', text, 'not_a_number', read.message);
     const metres = Math.round(read.value * MM) / MM;
     if (metres < LENGTH.least || metres > LENGTH.most) {
       const words = `${RANGE}; “${part.slice(0, SHOWN)}” is read as ${metres} m. Correct it, or say the unit: in the heading, as “lengths (mm)”, or in the cell.`;

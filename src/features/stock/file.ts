@@ -187,14 +187,17 @@ const toCells = ({ designation, table, lengths_m, lead_time_days, price_band, no
 export const stockCsv = (lines: readonly Written[]): string =>
   Papa.unparse([HEAD, ...lines.map(toCells)], { escapeFormulae: true });
 
+const oneLine = (text: string): string => text.replaceAll(/\s+/g, ' ');
+
 /** Rows as such a CSV: what can be read in metres and days, what cannot as it stands. */
 export function rowsCsv(rows: readonly StockRow[], as: ReadAs): string {
   const cells = rows.map(({ texts }) => {
     const held = readHolding(texts, as);
-    const { designation, table, lengths, lead_time, price_band, note } = texts;
+    const { designation, table } = texts;
+    // One line for each row, by which what is found wrong is known again.
     return 'lengths_m' in held
-      ? toCells({ ...held, designation, table })
-      : [designation, table, lengths, lead_time, price_band, note];
+      ? toCells({ ...held, designation: oneLine(designation), table: oneLine(table) })
+      : FIELDS.map((field) => oneLine(texts[field]));
   });
   return Papa.unparse([HEAD, ...cells]);
 }

@@ -106,6 +106,7 @@ describe('a query that forgets its WHERE', () => {
     'section_import',
     'import_acceptance',
     'import_mapping',
+    'saved_search',
     'stock_list',
     'stock_line',
   ])('of %s sees nothing before a practice is set', async (table) => {

@@ -87,6 +87,18 @@ const RULES = {
     grant(['librarian', 'principal']),
   ),
 
+  'search.save': rule('Searches are saved by people with a role in the practice.', grant(ROLES)),
+  'search.share': rule(
+    'A search is shared with the practice by an engineer or a librarian.',
+    grant(['engineer', 'librarian']),
+  ),
+  'search.change': rule('A saved search is changed by whoever saved it.', grant(ROLES, isAuthor)),
+  'search.remove': rule(
+    'A saved search is deleted by whoever saved it, or by a librarian where it is shared.',
+    grant(['librarian']),
+    grant(ROLES, isAuthor),
+  ),
+
   'recall.decide': rule(
     'What becomes of a recalled member is decided by an engineer or a principal with access to the job.',
     grant(['engineer', 'principal'], hasAccess),

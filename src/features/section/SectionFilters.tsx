@@ -1,4 +1,6 @@
 import type { UnitSystemName } from '@/engine/quantity';
+import { StockFilter } from '@/features/stock/StockFilter';
+import type { Supplier } from '@/features/stock/stock';
 import { type Bound, type PageState, withBound } from './address';
 import type { EditionView } from './edition';
 import { RangeFilter } from './RangeFilter';
@@ -13,6 +15,8 @@ interface SectionFiltersProps {
   readonly system: UnitSystemName;
   readonly editions: readonly EditionView[];
   readonly spread: Spread;
+  readonly suppliers: readonly Supplier[];
+  readonly today: string;
 }
 
 /** The head of the sections page: what a section is asked to be. */
@@ -31,7 +35,7 @@ export function SectionFilters(props: SectionFiltersProps) {
   );
 }
 
-function Designation({ state, onState, editions }: SectionFiltersProps) {
+function Designation({ state, onState, editions, suppliers, today }: SectionFiltersProps) {
   return (
     <div className="min-w-0 px-20 pt-14 pb-12 max-md:px-12">
       <h1 className="mb-8 text-sheet">Sections</h1>
@@ -70,6 +74,12 @@ function Designation({ state, onState, editions }: SectionFiltersProps) {
           </option>
         ))}
       </select>
+      <StockFilter
+        {...{ suppliers, today }}
+        stock={state.stock}
+        supplier={state.supplier}
+        onChange={(asked) => onState((before) => ({ ...before, ...asked }))}
+      />
     </div>
   );
 }

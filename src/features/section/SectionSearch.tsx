@@ -2,6 +2,7 @@ import { useCallback, useId, useMemo, useState } from 'react';
 import { Button } from '@/components/ui/Button';
 import { useKeys } from '@/components/ui/use-keys';
 import type { UnitSystemName } from '@/engine/quantity';
+import type { Supplier } from '@/features/stock/stock';
 import { cleared, type PageState, withSort } from './address';
 import type { Answer, FirstAnswer } from './answer';
 import { ColumnChooser } from './ColumnChooser';
@@ -28,6 +29,9 @@ export interface SectionSearchProps {
   /** How many sections the practice has. */
   readonly library: number;
   readonly editions: readonly EditionView[];
+  /** Whose stock is known, and the day that it is held against. */
+  readonly suppliers: readonly Supplier[];
+  readonly today: string;
   /** How many members use a section, by its key. */
   readonly uses: readonly (readonly [string, number])[];
   /** Columns that the person has chosen; null: the usual ones. */
@@ -60,7 +64,7 @@ interface SearchProps extends SectionSearchProps {
 }
 
 function Search(props: SearchProps) {
-  const { system, editions, practice, state, setState, answer } = props;
+  const { system, editions, suppliers, today, practice, state, setState, answer } = props;
   const found = useSearch(answer, state, setState, system);
   const { chosen } = found;
   const choosing = useColumns(state, setState, props.columns);
@@ -71,7 +75,11 @@ function Search(props: SearchProps) {
   });
   return (
     <>
-      <SectionFilters {...{ state, system, editions }} spread={answer.spread} onState={setState} />
+      <SectionFilters
+        {...{ state, system, editions, suppliers, today }}
+        spread={answer.spread}
+        onState={setState}
+      />
       <Schedule {...props} found={found} choosing={choosing} />
       <div className="grid flex-1 border-t-2 border-ink lg:grid-cols-[minmax(0,1fr)_414px_var(--title-column)] md:max-lg:grid-cols-[minmax(0,1fr)_var(--title-column)] [&>*]:border-ink [&>.zone]:border-t-0 lg:[&>*+*]:border-l md:max-lg:[&>:first-child]:col-span-2 md:max-lg:[&>:first-child]:border-b md:max-lg:[&>:last-child]:border-l max-md:[&>*+*]:border-t">
         <PinTray

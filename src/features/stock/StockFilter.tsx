@@ -1,0 +1,57 @@
+import { paths } from '@/paths';
+import { isOld, type Supplier } from './stock';
+import { ageWords, supplierWords } from './words';
+
+/** Whose stock is asked for, as it stands in an address. */
+export interface StockAsked {
+  /** '1' for anybody's. */
+  readonly stock: string;
+  /** The address of a stock list. */
+  readonly supplier: string;
+}
+
+interface StockFilterProps extends StockAsked {
+  readonly suppliers: readonly Supplier[];
+  readonly today: string;
+  readonly onChange: (asked: StockAsked) => void;
+}
+
+const ANY = '*';
+
+/** Only what is in stock, with anybody or with one supplier; nothing where the practice keeps no stock list. */
+export function StockFilter({ stock, supplier, suppliers, today, onChange }: StockFilterProps) {
+  if (suppliers.length === 0) return null;
+  const chosen = suppliers.filter(({ slug }) => (supplier === '' ? stock !== '' : slug === supplier));
+  const old = chosen.filter(({ asOf }) => isOld(asOf, today));
+  return (
+    <div className="text-schedule">
+      <select
+        aria-label="Stock"
+        className="input text-schedule!"
+        value={supplier || (stock === '' ? '' : ANY)}
+        onChange={({ target: { value } }) =>
+          onChange({ stock: value === ANY ? '1' : '', supplier: value === ANY ? '' : value })
+        }
+      >
+        <option value="">In stock or not</option>
+        <option value={ANY}>In stock</option>
+        {suppliers.map((one) => (
+          <option key={one.slug} value={one.slug}>
+            In stock: {supplierWords(one, today)}
+          </option>
+        ))}
+        {supplier !== '' && chosen.length === 0 && <option value={supplier}>Unknown supplier</option>}
+      </select>
+      <p className="mt-4 flex flex-wrap justify-between gap-x-10">
+        <a className="link" href={paths.stock}>
+          Stock lists
+        </a>
+        {old.length > 0 && (
+          <span role="status" className="font-semibold text-ochre-ink">
+            {old.map(({ name, asOf }) => `${name}: ${ageWords(asOf, today)}`).join('; ')}
+          </span>
+        )}
+      </p>
+    </div>
+  );
+}

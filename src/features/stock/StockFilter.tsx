@@ -25,33 +25,33 @@ export function StockFilter({ stock, supplier, suppliers, today, onChange }: Sto
   const old = chosen.filter(({ asOf }) => isOld(asOf, today));
   return (
     <div className="text-schedule">
-      <select
-        aria-label="Stock"
-        className="input text-schedule!"
-        value={supplier || (stock === '' ? '' : ANY)}
-        onChange={({ target: { value } }) =>
-          onChange({ stock: value === ANY ? '1' : '', supplier: value === ANY ? '' : value })
-        }
-      >
-        <option value="">In stock or not</option>
-        <option value={ANY}>In stock</option>
-        {suppliers.map((one) => (
-          <option key={one.slug} value={one.slug}>
-            In stock: {supplierWords(one, today)}
-          </option>
-        ))}
-        {supplier !== '' && chosen.length === 0 && <option value={supplier}>Unknown supplier</option>}
-      </select>
-      <p className="mt-4 flex flex-wrap justify-between gap-x-10">
-        <a className="link" href={paths.stock}>
-          Stock lists
+      <div className="flex items-center gap-10">
+        <select
+          aria-label="Stock"
+          className="input min-w-0 flex-1 text-schedule!"
+          value={supplier || (stock === '' ? '' : ANY)}
+          onChange={({ target: { value } }) =>
+            onChange({ stock: value === ANY ? '1' : '', supplier: value === ANY ? '' : value })
+          }
+        >
+          <option value="">In stock or not</option>
+          <option value={ANY}>In stock</option>
+          {suppliers.map((one) => (
+            <option key={one.slug} value={one.slug}>
+              In stock: {supplierWords(one, today)}
+            </option>
+          ))}
+          {supplier !== '' && chosen.length === 0 && <option value={supplier}>Unknown supplier</option>}
+        </select>
+        <a className="link" href={paths.stock} aria-label="Stock lists">
+          Lists
         </a>
-        {old.length > 0 && (
-          <span role="status" className="font-semibold text-ochre-ink">
-            {old.map(({ name, asOf }) => `${name}: ${ageWords(asOf, today)}`).join('; ')}
-          </span>
-        )}
-      </p>
+      </div>
+      {old.length > 0 && (
+        <p role="status" className="mt-4 font-semibold text-ochre-ink">
+          {old.map(({ name, asOf }) => `${name}: ${ageWords(asOf, today)}`).join('; ')}
+        </p>
+      )}
     </div>
   );
 }

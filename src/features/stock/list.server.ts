@@ -3,6 +3,7 @@ import type { Tx } from '@/db/client';
 import { person } from '@/db/schema/account';
 import { stockLine, stockList } from '@/db/schema/stock';
 import { withPractice } from '@/db/tenancy';
+import { designationKey } from '@/engine/section';
 import { requirePermission } from '@/features/account/permission';
 import type { AuditEntry } from '@/features/audit/audit';
 import { recordAudit } from '@/features/audit/audit.server';
@@ -11,6 +12,7 @@ import { AppError, invalid, notFound, stale } from '@/lib/app-error';
 import { suppliersOf } from './of-sections.server';
 import {
   daysBetween,
+  type Holding,
   type NewStockList,
   type StockListChange,
   type StockListView,
@@ -63,6 +65,51 @@ export function listStock(actor: Actor): Promise<StockListView[]> {
 export function listSuppliers(actor: Actor): Promise<Supplier[]> {
   requirePermission(actor, 'library.read');
   return withPractice(actor, (tx) => suppliersOf(tx, actor.practiceId));
+}
+
+interface HeldBy extends Holding {
+  /** The address of the stock list, the supplier's name, and the day of the list. */
+  readonly supplier: string;
+  readonly name: string;
+  readonly asOf: string;
+}
+
+/** Who holds a section, of how many stock lists. */
+export function readSectionStock(
+  actor: Actor,
+  { table, designation }: { readonly table: string; readonly designation: string },
+): Promise<{ readonly held: readonly HeldBy[]; readonly lists: number }> {
+  requirePermission(actor, 'library.read');
+  const { practiceId } = actor;
+  return withPractice(actor, async (tx) => {
+    const [held, lists] = await Promise.all([
+      tx
+        .select({
+          supplier: stockList.slug,
+          name: stockList.supplier,
+          asOf: stockList.asOf,
+          lengths_m: stockLine.lengthsM,
+          lead_time_days: stockLine.leadTimeDays,
+          price_band: stockLine.priceBand,
+          note: stockLine.note,
+        })
+        .from(stockLine)
+        .innerJoin(
+          stockList,
+          and(eq(stockList.practiceId, stockLine.practiceId), eq(stockList.id, stockLine.listId)),
+        )
+        .where(
+          and(
+            eq(stockLine.practiceId, practiceId),
+            eq(stockLine.tableSlug, table),
+            eq(stockLine.designationKey, designationKey(designation)),
+          ),
+        )
+        .orderBy(asc(stockList.supplier), asc(stockList.slug)),
+      suppliersOf(tx, practiceId),
+    ]);
+    return { held, lists: lists.length };
+  });
 }
 
 export function readStockList(actor: Actor, slug: string): Promise<StockListView> {

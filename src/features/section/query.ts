@@ -196,8 +196,8 @@ function compareBy(a: Searchable, b: Searchable, { field, descending }: NonNulla
 export const LIGHTEST = { field: 'mass_kg_m', descending: false } as const;
 
 /** Fewer letters in common than this and a designation is not offered for the one that was typed. */
-const ALIKE = 0.35;
-const OFFERED = 20;
+export const ALIKE = 0.35;
+export const OFFERED = 20;
 
 /** Of designations of which none answers what was typed, the few most like it, the most alike first. */
 export function nearestDesignations<T extends { readonly designation: string }>(

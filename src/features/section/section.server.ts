@@ -19,9 +19,8 @@ import { notFound } from '@/lib/app-error';
 import { initialsOf } from '@/lib/initials';
 import { type EditionView, editionDocument, type SectionDetail } from './edition';
 import type { SectionPlace, SectionQuery } from './query';
-import { type Found, issuedRows, searchRows, selectRows, toItem } from './search.server';
+import { countRows, type Found, searchRows, selectRows, spreadRows, toItem } from './search.server';
 import type { Spread } from './spread';
-import { spreadRows } from './spread.server';
 
 const SECTION_TABLE = 'section-table';
 
@@ -41,13 +40,7 @@ export function searchSections(
 /** How many sections the issued editions have. */
 export function countSections(user: User): Promise<number> {
   requirePermission(user, 'library.read');
-  return withPractice(user, async (tx) => {
-    const [counted] = await tx
-      .select({ total: count() })
-      .from(section)
-      .where(await issuedRows(tx, user.practiceId));
-    return counted?.total ?? 0;
-  });
+  return withPractice(user, (tx) => countRows(tx, user.practiceId));
 }
 
 /** How the depth and mass of what answers a query are spread, in bins round in a unit system. */

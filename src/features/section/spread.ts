@@ -28,7 +28,7 @@ export type Spread = z.output<typeof spreadSchema>;
 
 const BARS = 32;
 /** Of a bin: a value this little below a boundary is on it, since a bin of inches has no exact width in mm. */
-export const ON_BOUNDARY = 1e-9;
+const ON_BOUNDARY = 1e-9;
 
 /** Bins as round as the unit that is shown allows, up to the greatest value; in mm or kg/m. */
 export function binsTo(
@@ -42,11 +42,15 @@ export function binsTo(
   return { bin, bins: Math.max(1, Math.ceil(greatest / bin - ON_BOUNDARY)) };
 }
 
-/** How many values are in each bin; one at the very end is in the last. */
+/** The bin that a value is in; one at the very end is in the last. */
+export const binOf = (value: number, bin: number, bins: number): number =>
+  Math.min(bins - 1, Math.floor(value / bin + ON_BOUNDARY));
+
+/** How many values are in each bin. */
 export function countsOf(values: readonly number[], bin: number, bins: number): number[] {
   const counts = new Array<number>(bins).fill(0);
   for (const value of values) {
-    const i = Math.min(bins - 1, Math.floor(value / bin + ON_BOUNDARY));
+    const i = binOf(value, bin, bins);
     counts[i] = (counts[i] ?? 0) + 1;
   }
   return counts;

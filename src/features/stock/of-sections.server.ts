@@ -1,21 +1,28 @@
-import { and, asc, eq, type SQL, sql } from 'drizzle-orm';
+import { and, asc, eq, sql } from 'drizzle-orm';
 import type { Tx } from '@/db/client';
-import { section } from '@/db/schema/section';
 import { stockLine, stockList } from '@/db/schema/stock';
 import { designationKey } from '@/engine/section';
 import { groupBy } from '@/lib/group-by';
 import type { SectionStock, Supplier } from './stock';
 
-/** Of sections: that a supplier holds them, this one or any. */
-export function isStocked(supplier: string | null): SQL {
-  const bySupplier =
-    supplier === null
-      ? sql``
-      : sql`and ${stockLine.listId} = (select ${stockList.id} from ${stockList}
-          where ${stockList.practiceId} = ${section.practiceId} and ${stockList.slug} = ${supplier})`;
-  return sql`exists (select from ${stockLine} where ${stockLine.practiceId} = ${section.practiceId}
-    and ${stockLine.tableSlug} = ${section.tableSlug}
-    and ${stockLine.designationKey} = ${section.designationKey} ${bySupplier})`;
+/** The keys of the sections that a supplier holds, or any, by their table. */
+export async function stockedNames(
+  tx: Tx,
+  practiceId: string,
+  supplier: string | null,
+): Promise<ReadonlyMap<string, ReadonlySet<string>>> {
+  const rows = await tx
+    .select({ table: stockLine.tableSlug, key: stockLine.designationKey })
+    .from(stockLine)
+    .innerJoin(
+      stockList,
+      and(eq(stockList.practiceId, stockLine.practiceId), eq(stockList.id, stockLine.listId)),
+    )
+    .where(
+      and(eq(stockLine.practiceId, practiceId), supplier === null ? undefined : eq(stockList.slug, supplier)),
+    );
+  const byTable = groupBy(rows, ({ table }) => table);
+  return new Map([...byTable].map(([table, held]) => [table, new Set(held.map(({ key }) => key))]));
 }
 
 interface Named {

@@ -1,6 +1,7 @@
 import { type ReactNode, useEffect, useRef } from 'react';
 import { RichHtml } from '@/components/drawing/marks/RichHtml';
 import { Button } from '@/components/ui/Button';
+import { Checkbox } from '@/components/ui/Choice';
 import type { UnitSystemName } from '@/engine/quantity';
 import { USUAL_COLUMNS } from './columns';
 import { axesOf, FIELD_WORDS, symbolOf } from './display';
@@ -119,19 +120,19 @@ function Choice({ measure, system, isShown, isOnly, onShown, children }: ChoiceP
       data-column={measure}
       className="flex min-h-28 items-center gap-4 pointer-coarse:min-h-44 max-md:min-h-44"
     >
-      <label className="mr-auto flex min-w-0 items-center gap-8">
-        <input
-          type="checkbox"
+      <span className="mr-auto min-w-0">
+        <Checkbox
           data-part="shown"
           checked={isShown}
           disabled={isOnly}
           onChange={(event) => onShown(event.target.checked)}
-        />
-        <i className="min-w-28 whitespace-nowrap">
-          <RichHtml text={symbolOf(field, axesOf(system))} />
-        </i>
-        <span className={isShown ? '' : 'text-ink-2'}>{FIELD_WORDS[field].name}</span>
-      </label>
+        >
+          <i className="inline-block min-w-36 whitespace-nowrap">
+            <RichHtml text={symbolOf(field, axesOf(system))} />
+          </i>
+          {FIELD_WORDS[field].name}
+        </Checkbox>
+      </span>
       {isShown && children}
     </li>
   );

@@ -1,4 +1,4 @@
-import { useState } from 'react';
+import { type ReactNode, useState } from 'react';
 import { RichHtml } from '@/components/drawing/marks/RichHtml';
 import { Button } from '@/components/ui/Button';
 import { cleared, MEASURES, USUAL_BOUNDS, withRequired } from './address';
@@ -10,7 +10,13 @@ import { focusOnLine, type RequirementsProps } from './RequiredLines';
 const WORDS = { w_pl_min: 'Plastic modulus', i_major_min: 'Second moment', width_max: 'Width' } as const;
 
 /** What else is asked: the three that are asked most, and any other property by its name. */
-export function Requirements({ state, system, onBound, onState }: RequirementsProps) {
+export function Requirements({
+  state,
+  system,
+  onBound,
+  onState,
+  children,
+}: RequirementsProps & { readonly children: ReactNode }) {
   const axes = axesOf(system);
   return (
     <div className="min-w-0 border-rule px-18 pt-14 pb-12 max-lg:border-t lg:border-l max-md:px-12 md:max-lg:nth-2:border-t-0 md:max-lg:nth-[even]:border-l">
@@ -49,10 +55,11 @@ export function Requirements({ state, system, onBound, onState }: RequirementsPr
           focusOnLine(measure);
         }}
       />
-      <div className="mt-4 text-schedule">
+      <div className="mt-4 flex flex-wrap gap-x-14 text-schedule">
         <Button tone="text" onClick={() => onState(cleared)}>
           Clear all
         </Button>
+        {children}
       </div>
     </div>
   );

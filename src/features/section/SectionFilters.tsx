@@ -7,6 +7,7 @@ import { RangeFilter } from './RangeFilter';
 import { RequiredLines } from './RequiredLines';
 import { Requirements } from './Requirements';
 import { ShapeFilter } from './ShapeFilter';
+import { SavedButtons, type SavedSearchesOf, SavedStrip, useSavedSearches } from './saved/SavedSearches';
 import type { Spread } from './spread';
 
 interface SectionFiltersProps {
@@ -17,11 +18,13 @@ interface SectionFiltersProps {
   readonly spread: Spread;
   readonly suppliers: readonly Supplier[];
   readonly today: string;
+  readonly saved: SavedSearchesOf;
 }
 
 /** The head of the sections page: what a section is asked to be. */
 export function SectionFilters(props: SectionFiltersProps) {
-  const { state, onState, system, spread } = props;
+  const { state, onState, system, spread, saved } = props;
+  const opened = useSavedSearches(saved);
   const onBound = (bounds: readonly (readonly [Bound, number | null])[]) =>
     onState((before) => bounds.reduce((now, [name, value]) => withBound(now, name, value), before));
   return (
@@ -29,8 +32,11 @@ export function SectionFilters(props: SectionFiltersProps) {
       <Designation {...props} />
       <RangeFilter measure="depth" {...{ state, system, onBound }} spread={spread.depth} />
       <RangeFilter measure="mass" {...{ state, system, onBound }} spread={spread.mass} />
-      <Requirements {...{ state, system, onBound, onState }} />
+      <Requirements {...{ state, system, onBound, onState }}>
+        <SavedButtons opened={opened} />
+      </Requirements>
       <RequiredLines {...{ state, system, onBound, onState }} />
+      <SavedStrip {...saved} {...{ opened, state, onState }} />
     </search>
   );
 }

@@ -14,6 +14,7 @@ import type { SectionMeasure } from './query';
 import { ResultLine } from './ResultLine';
 import { SectionFilters } from './SectionFilters';
 import { SectionTable } from './SectionTable';
+import type { SavedSearchesOf } from './saved/SavedSearches';
 import { useAddress } from './use-address';
 import { useAnswerHere } from './use-all-sections';
 import { type ColumnChoosing, useColumns } from './use-columns';
@@ -34,6 +35,7 @@ export interface SectionSearchProps {
   readonly today: string;
   /** How many members use a section, by its key. */
   readonly uses: readonly (readonly [string, number])[];
+  readonly saved: SavedSearchesOf;
   /** Columns that the person has chosen; null: the usual ones. */
   readonly columns: readonly SectionMeasure[] | null;
 }
@@ -77,6 +79,7 @@ function Search(props: SearchProps) {
     <>
       <SectionFilters
         {...{ state, system, editions, suppliers, today }}
+        saved={props.saved}
         spread={answer.spread}
         onState={setState}
       />

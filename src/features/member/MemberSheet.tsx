@@ -219,6 +219,9 @@ function Zones({ data, work }: PartProps) {
             inputs={inputs}
             materials={data.materials}
             system={system}
+            suppliers={data.suppliers}
+            today={data.today}
+            lengthM={evaluation?.beam.length ?? null}
             mayEdit={data.mayEdit}
             onPick={(section) => change({ section })}
           />

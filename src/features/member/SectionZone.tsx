@@ -1,12 +1,15 @@
-import { useState } from 'react';
+import { type ReactNode, useState } from 'react';
 import { RichHtml } from '@/components/drawing/marks/RichHtml';
-import { Field } from '@/components/ui/Field';
+import { ChoiceField, Field } from '@/components/ui/Field';
 import { UtilisationTick } from '@/components/ui/UtilisationTick';
 import { ZoneHeading } from '@/components/ui/ZoneHeading';
 import { formatFor, readQuantity, type UnitSystemName } from '@/engine/quantity';
 import { sectionCautions } from '@/engine/section';
 import type { MaterialChoice } from '@/features/material/choice';
 import type { SectionItem } from '@/features/section/section';
+import { StockWords } from '@/features/stock/StockWords';
+import type { Supplier } from '@/features/stock/stock';
+import { stockChoices } from '@/features/stock/words';
 import { draftSection, type Utilisation } from './candidates';
 import type { MemberInputs } from './evaluate';
 import { type Candidates, useCandidates, useUtilisations } from './use-candidates';
@@ -17,6 +20,10 @@ interface SectionZoneProps {
   readonly inputs: MemberInputs;
   readonly materials: readonly MaterialChoice[];
   readonly system: UnitSystemName;
+  readonly suppliers: readonly Supplier[];
+  readonly today: string;
+  /** Of the whole member, in m; null until it is known. */
+  readonly lengthM: number | null;
   readonly mayEdit: boolean;
   readonly onPick: (section: DraftSection) => void;
 }
@@ -28,8 +35,9 @@ const UNITS = {
 const NONE: readonly SectionItem[] = [];
 
 /** Sections by designation, depth and mass, the lightest first, each judged with the member's loads. */
-export function SectionZone({ section, inputs, materials, system, mayEdit, onPick }: SectionZoneProps) {
-  const [text, setText] = useState({ q: '', depth: '', mass: '' });
+export function SectionZone({ section, inputs, ...props }: SectionZoneProps) {
+  const { materials, system, suppliers, today } = props;
+  const [text, setText] = useState({ q: '', depth: '', mass: '', stock: '' });
   const units = UNITS[system];
   const depth = limit(text.depth, 'length', units.depth);
   const mass = limit(text.mass, 'mass_per_length', units.mass);
@@ -37,6 +45,7 @@ export function SectionZone({ section, inputs, materials, system, mayEdit, onPic
     q: text.q,
     depthMax: depth.value === null ? null : depth.value * 1000,
     massMax: mass.value,
+    stock: text.stock,
   };
   const found = useCandidates(search, section);
   const items = found.state === 'found' ? found.items : NONE;
@@ -50,42 +59,63 @@ export function SectionZone({ section, inputs, materials, system, mayEdit, onPic
         text={text}
         units={units}
         faults={{ depth: depth.fault, mass: mass.fault }}
+        stocks={suppliers.length > 0 ? stockChoices(suppliers, today) : []}
         onChange={setText}
       />
       <p role="status" className="text-schedule text-ink-2 empty:hidden">
         {said(found, section)}
       </p>
       {section && <Cautions {...section.values} system={system} />}
-      {items.length > 0 && (
-        <table className="schedule entries">
-          <thead>
-            <tr>
-              <th scope="col">Section</th>
-              <th scope="col" className="figure">
-                Mass<small>{units.massName}</small>
-              </th>
-              <th scope="col">Bending</th>
-              <th scope="col">Shear</th>
-              <th scope="col">Deflection</th>
-              {mayEdit && <th scope="col">Use</th>}
-            </tr>
-          </thead>
-          <tbody>
-            {items.map((item) => (
-              <Row
-                key={`${item.table} ${item.designation}`}
-                item={item}
-                utilisation={utilisations.get(item)}
-                isUsed={section?.table === item.table && section.values.designation === item.designation}
-                system={system}
-                massName={units.massName}
-                onPick={mayEdit ? () => onPick(draftSection(item, section, materials)) : undefined}
-              />
-            ))}
-          </tbody>
-        </table>
-      )}
+      <CandidateTable {...{ ...props, section, items, utilisations }} massName={units.massName} />
     </section>
+  );
+}
+
+interface CandidateTableProps extends Omit<SectionZoneProps, 'inputs'> {
+  readonly items: readonly SectionItem[];
+  readonly utilisations: ReadonlyMap<SectionItem, Utilisation | string>;
+  readonly massName: string;
+}
+
+function CandidateTable({
+  items,
+  section,
+  utilisations,
+  materials,
+  massName,
+  ...props
+}: CandidateTableProps) {
+  const { system, mayEdit, onPick } = props;
+  if (items.length === 0) return null;
+  return (
+    <table className="schedule entries">
+      <thead>
+        <tr>
+          <th scope="col">Section</th>
+          <th scope="col" className="figure">
+            Mass<small>{massName}</small>
+          </th>
+          <th scope="col">Bending</th>
+          <th scope="col">Shear</th>
+          <th scope="col">Deflection</th>
+          {mayEdit && <th scope="col">Use</th>}
+        </tr>
+      </thead>
+      <tbody>
+        {items.map((item) => (
+          <Row
+            key={`${item.table} ${item.designation}`}
+            item={item}
+            utilisation={utilisations.get(item)}
+            isUsed={section?.table === item.table && section.values.designation === item.designation}
+            system={system}
+            stock={<StockWords item={item} {...props} />}
+            massName={massName}
+            onPick={mayEdit ? () => onPick(draftSection(item, section, materials)) : undefined}
+          />
+        ))}
+      </tbody>
+    </table>
   );
 }
 
@@ -105,16 +135,19 @@ interface SearchText {
   readonly q: string;
   readonly depth: string;
   readonly mass: string;
+  readonly stock: string;
 }
 
 interface SearchFieldsProps {
   readonly text: SearchText;
   readonly units: { readonly depth: string; readonly massName: string };
   readonly faults: { readonly depth: string | undefined; readonly mass: string | undefined };
+  /** None where no stock is known. */
+  readonly stocks: readonly { readonly value: string; readonly label: string }[];
   readonly onChange: (text: SearchText) => void;
 }
 
-function SearchFields({ text, units, faults, onChange }: SearchFieldsProps) {
+function SearchFields({ text, units, faults, stocks, onChange }: SearchFieldsProps) {
   const field = (name: keyof SearchText) => ({
     value: text[name],
     autoComplete: 'off',
@@ -127,6 +160,11 @@ function SearchFields({ text, units, faults, onChange }: SearchFieldsProps) {
       </div>
       <Field label={`Depth at most, ${units.depth}`} error={faults.depth} {...field('depth')} />
       <Field label={`Mass at most, ${units.massName}`} error={faults.mass} {...field('mass')} />
+      {stocks.length > 0 && (
+        <div className="col-span-3 max-md:col-span-2">
+          <ChoiceField label="Stock" choices={stocks} {...field('stock')} />
+        </div>
+      )}
     </div>
   );
 }
@@ -156,17 +194,19 @@ interface RowProps {
   readonly utilisation: Utilisation | string | undefined;
   readonly isUsed: boolean;
   readonly system: UnitSystemName;
+  readonly stock: ReactNode;
   readonly massName: string;
   readonly onPick: (() => void) | undefined;
 }
 
-function Row({ item, utilisation, isUsed, system, massName, onPick }: RowProps) {
+function Row({ item, utilisation, isUsed, system, stock, massName, onPick }: RowProps) {
   const isSaid = typeof utilisation === 'string';
   const mass = formatFor(item.mass_kg_m, 'mass_per_length', system).split('\u00a0')[0];
   return (
     <tr data-chosen={isUsed ? '' : undefined} className="max-md:grid-cols-3">
       <th scope="row" className="whitespace-nowrap">
         {item.designation}
+        {stock}
       </th>
       <td className="figure">
         {mass}

@@ -1,6 +1,7 @@
 import type { CheckKind } from '@/engine/check';
 import { choiceOf, type MaterialChoice } from '@/features/material/choice';
 import { type SectionItem, toRowOrigin, toSectionValues } from '@/features/section/section';
+import { stockQuery } from '@/features/stock/words';
 import { usualMaterial } from '@/features/template/section-pick';
 import { evaluateMember, type MemberInputs } from './evaluate';
 import type { DraftSection } from './workspace';
@@ -10,6 +11,8 @@ export interface SectionSearch {
   readonly q: string;
   readonly depthMax: number | null;
   readonly massMax: number | null;
+  /** Whose stock: a choice of stockChoices, empty for any section. */
+  readonly stock: string;
 }
 
 const MOST = '10';
@@ -18,11 +21,11 @@ const LIGHTER = 0.75;
 
 /** The query of GET /api/v1/sections, the lightest first. Null where nothing is said to look for. */
 export function sectionQuery(
-  { q, depthMax, massMax }: SectionSearch,
+  { q, depthMax, massMax, stock }: SectionSearch,
   current: DraftSection | null,
 ): Record<string, string> | null {
   const isOpen = q.trim() === '' && depthMax === null && massMax === null;
-  if (isOpen && !current) return null;
+  if (isOpen && !current && stock === '') return null;
   const inTable = q.trim() === '' && current ? { table: current.table } : {};
   return {
     limit: MOST,
@@ -31,6 +34,7 @@ export function sectionQuery(
     ...(q.trim() !== '' && { q: q.trim() }),
     ...(depthMax !== null && { depth_max: String(depthMax) }),
     ...(massMax !== null && { mass_max: String(massMax) }),
+    ...stockQuery(stock),
     ...(isOpen && current && { mass_min: String(current.values.massKgM * LIGHTER) }),
   };
 }

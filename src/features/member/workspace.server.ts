@@ -9,6 +9,7 @@ import { listCriteria } from '@/features/criteria/criteria.server';
 import { type Actor, openJob } from '@/features/job/job.server';
 import { materialChoices } from '@/features/material/material.server';
 import { toRowOrigin } from '@/features/section/section';
+import { suppliersOf } from '@/features/stock/of-sections.server';
 import { loadPins } from './pins.server';
 import { requireMember, toMemberView } from './row.server';
 import { type CombinationChoice, changesOf, type HistoryLine, type WorkspaceData } from './workspace';
@@ -42,6 +43,8 @@ export async function readWorkspace(user: Actor, number: string, mark: string): 
       criteria: pinned ? [pinned, ...others] : others,
       sets: [...(combinations ? [combinations] : []), ...sets].map(toChoice),
       history: await historyOf(tx, user.practiceId, row.id),
+      suppliers: await suppliersOf(tx, user.practiceId),
+      today: new Date().toISOString().slice(0, 10),
       // The database opened the job to this person; what is left to ask is the role.
       mayEdit: job.status === 'open' && may(user, 'member.edit', { access: 'practice' }),
     };

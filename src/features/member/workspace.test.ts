@@ -171,7 +171,7 @@ describe('candidate sections', () => {
 
   test('begin near the section in use, and are looked for everywhere once something is said', () => {
     const current = draftSection(item, null, MATERIAL_CHOICES);
-    const all = { q: '', depthMax: null, massMax: null };
+    const all = { q: '', depthMax: null, massMax: null, stock: '' };
     expect(sectionQuery(all, null)).toBeNull();
     expect(sectionQuery(all, current)).toMatchObject({ table: 'european-i', mass_min: String(42.2 * 0.75) });
     expect(sectionQuery({ ...all, q: 'w12x26' }, current)).toEqual({
@@ -182,6 +182,11 @@ describe('candidate sections', () => {
     expect(sectionQuery({ ...all, depthMax: 310 }, current)).toMatchObject({
       table: 'european-i',
       depth_max: '310',
+    });
+    expect(sectionQuery({ ...all, stock: '*' }, null)).toEqual({ limit: '10', sort: 'mass', stock: '1' });
+    expect(sectionQuery({ ...all, stock: 'a-works' }, current)).toMatchObject({
+      table: 'european-i',
+      supplier: 'a-works',
     });
   });
 });

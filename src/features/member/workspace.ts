@@ -7,6 +7,7 @@ import type { Template } from '@/engine/template';
 import { choiceOf, type MaterialChoice, materialKey, readMaterialKey } from '@/features/material/choice';
 import type { SectionValues } from '@/features/section/resolve';
 import type { RowOrigin } from '@/features/section/section';
+import type { Supplier } from '@/features/stock/stock';
 import { type Raw, toParameters, toRaw } from '@/features/template/raw';
 import type { MemberInputs } from './evaluate';
 import type { MemberView, SaveMember } from './member';
@@ -40,6 +41,9 @@ export interface WorkspaceData {
   readonly sets: readonly CombinationChoice[];
   readonly history: readonly HistoryLine[];
   readonly mayEdit: boolean;
+  /** Whose stock is known, and the day that it is held against. */
+  readonly suppliers: readonly Supplier[];
+  readonly today: string;
 }
 
 export interface DraftSection {

@@ -45,14 +45,14 @@ export function LoadZone({ list, tableName, today, act }: LoadZoneProps) {
           <Keeping load={load} loaded={loaded} {...{ list, today, act }} />
         </>
       ) : (
-        <Taking onRead={(name, bytes) => void load.read(name, bytes)} isBusy={isBusy} />
+        <Taking onRead={(name, content) => void load.read(name, content)} isBusy={isBusy} />
       )}
     </section>
   );
 }
 
 interface TakingProps {
-  readonly onRead: (name: string, bytes: Uint8Array) => void;
+  readonly onRead: (name: string, content: Blob) => void;
   readonly isBusy: boolean;
 }
 
@@ -60,13 +60,13 @@ interface TakingProps {
 function Taking({ onRead, isBusy }: TakingProps) {
   const [text, setText] = useState('');
   const [isOver, setOver] = useState(false);
-  const take = async (file: File | undefined) => {
-    if (file) onRead(file.name, new Uint8Array(await file.arrayBuffer()));
+  const take = (file: File | undefined) => {
+    if (file) onRead(file.name, file);
   };
   const drop = (event: DragEvent) => {
     event.preventDefault();
     setOver(false);
-    void take(event.dataTransfer.files[0]);
+    take(event.dataTransfer.files[0]);
   };
   return (
     <section
@@ -80,7 +80,7 @@ function Taking({ onRead, isBusy }: TakingProps) {
       onDrop={drop}
     >
       <p className="max-w-[70ch] text-ink-2">{WANTED}</p>
-      <Pick onPick={(file) => void take(file)} />
+      <Pick onPick={take} />
       <TextField
         label="Lines of the list"
         rows={6}
@@ -91,7 +91,7 @@ function Taking({ onRead, isBusy }: TakingProps) {
       />
       <p>
         <Button
-          onClick={() => onRead('What was pasted', new TextEncoder().encode(text))}
+          onClick={() => onRead('What was pasted', new Blob([text]))}
           {...(text.trim() === '' && { reason: 'Paste some lines first.' })}
         >
           {isBusy ? 'Reading' : 'Read the lines'}

@@ -1,6 +1,6 @@
 import { paths } from '@/paths';
 import { isOld, type Supplier } from './stock';
-import { ageWords, supplierWords } from './words';
+import { ANYBODY, ageWords, stockChoices, stockQuery } from './words';
 
 /** Whose stock is asked for, as it stands in an address. */
 export interface StockAsked {
@@ -16,8 +16,6 @@ interface StockFilterProps extends StockAsked {
   readonly onChange: (asked: StockAsked) => void;
 }
 
-const ANY = '*';
-
 /** Only what is in stock, with anybody or with one supplier; nothing where the practice keeps no stock list. */
 export function StockFilter({ stock, supplier, suppliers, today, onChange }: StockFilterProps) {
   if (suppliers.length === 0) return null;
@@ -29,16 +27,12 @@ export function StockFilter({ stock, supplier, suppliers, today, onChange }: Sto
         <select
           aria-label="Stock"
           className="input min-w-0 flex-1 text-schedule!"
-          value={supplier || (stock === '' ? '' : ANY)}
-          onChange={({ target: { value } }) =>
-            onChange({ stock: value === ANY ? '1' : '', supplier: value === ANY ? '' : value })
-          }
+          value={supplier || (stock === '' ? '' : ANYBODY)}
+          onChange={({ target }) => onChange({ stock: '', supplier: '', ...stockQuery(target.value) })}
         >
-          <option value="">In stock or not</option>
-          <option value={ANY}>In stock</option>
-          {suppliers.map((one) => (
-            <option key={one.slug} value={one.slug}>
-              In stock: {supplierWords(one, today)}
+          {stockChoices(suppliers, today).map(({ value, label }) => (
+            <option key={value} value={value}>
+              {label}
             </option>
           ))}
           {supplier !== '' && chosen.length === 0 && <option value={supplier}>Unknown supplier</option>}

@@ -17,7 +17,17 @@ export interface Loaded {
   readonly checked: readonly StockRow[];
 }
 
-const TOO_LARGE = 'The list is larger than 5 MB. Split it, or leave columns out.';
+type Reading = ReturnType<typeof readStockFile> | { ok: false; refusal: { message: string } };
+
+const refused = (message: string): Reading => ({ ok: false, refusal: { message } });
+
+/** What is too large is not read at all. */
+async function readContent(content: Blob): Promise<Reading> {
+  if (content.size > MOST_BYTES)
+    return refused('The list is larger than 5 MB. Split it, or leave columns out.');
+  const bytes = await content.arrayBuffer().catch(() => null);
+  return bytes ? readStockFile(new Uint8Array(bytes)) : refused('It cannot be read. Choose it again.');
+}
 
 /** The row that a fault was found in: rows are sent one to a line, under one line of headings. */
 export const checkedRow = ({ checked }: Loaded, { line }: LineFault): StockRow | undefined =>
@@ -47,12 +57,9 @@ export function useLoad(slug: string) {
     isBusy,
     say: setProblem,
     clear: () => setLoaded(null),
-    read: (name: string, bytes: Uint8Array) =>
+    read: (name: string, content: Blob) =>
       busily(async () => {
-        const reading =
-          bytes.length > MOST_BYTES
-            ? ({ ok: false, refusal: { message: TOO_LARGE } } as const)
-            : readStockFile(bytes);
+        const reading = await readContent(content);
         if (!reading.ok) return setProblem(`${name}: ${reading.refusal.message}`);
         const { file } = reading;
         const check = await ask(file, file.rows);

@@ -41,9 +41,23 @@ export function heldWords(
   return words.join(' · ');
 }
 
-/** A supplier as a choice of a filter: with the age of the list where it is old. */
-export const supplierWords = ({ name, asOf }: Supplier, today: string): string =>
-  isOld(asOf, today) ? `${name} (${ageWords(asOf, today)})` : name;
+/** A choice of stock: '' any section, '*' what anybody holds, else the address of a stock list. */
+export const ANYBODY = '*';
+
+export const stockChoices = (suppliers: readonly Supplier[], today: string) => [
+  { value: '', label: 'In stock or not' },
+  { value: ANYBODY, label: 'In stock' },
+  ...suppliers.map(({ slug, name, asOf }) => ({
+    value: slug,
+    label: `In stock: ${name}${isOld(asOf, today) ? ` (${ageWords(asOf, today)})` : ''}`,
+  })),
+];
+
+/** The fields of the section list's query for such a choice. */
+export function stockQuery(choice: string): { stock?: string; supplier?: string } {
+  if (choice === '') return {};
+  return choice === ANYBODY ? { stock: '1' } : { supplier: choice };
+}
 
 /** Each supplier of a section by its name, with what it holds. */
 export const namedStock = (

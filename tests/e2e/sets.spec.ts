@@ -128,3 +128,54 @@ test('the form is sound at every width, by day and by night', async ({ page, bas
     await expectSound(page, `combination set at ${width}`);
   }
 });
+
+test('a librarian writes a material set: values in their units, what cannot be, a pasted step', async ({
+  page,
+  baseURL,
+}) => {
+  test.setTimeout(120_000);
+  const slug = `materials-of-the-journey-${STAMP}`;
+  await enter(page, baseURL, LIBRARIAN);
+  await page.goto(`/library/new?kind=material-set&from=${encodeURIComponent('en-10025-2004 1')}`);
+  await page.getByLabel('Address').fill(slug);
+  await main(page, 'Begin the draft').click();
+  await expect(page).toHaveURL(/\/drafts\/1$/);
+  await isLive(page);
+  await page.getByLabel('Reference').fill(`Steel of ${STAMP % 100_000}`);
+
+  await test.step('f_u below f_y is said at its field, and is gone when it is put right', async () => {
+    const tensile = cell(page, 'Tensile strength f_u, S355, step 1');
+    await expect(tensile).toHaveValue('470');
+    await tensile.fill('354');
+    await expect(page.getByRole('alert').getByText('not below the yield strength')).toBeVisible();
+    await expect(tensile).toHaveAttribute('aria-invalid', 'true');
+    await tensile.fill('68 ksi');
+    await tensile.fill('470');
+    await expect(page.getByText('None. It can be sent to review.')).toBeVisible();
+  });
+
+  await test.step('a steel pasted from a spreadsheet has a row of its own', async () => {
+    const last = cell(page, 'Material, steel 4');
+    await last.focus();
+    await last.evaluate((field, text) => {
+      const clipboardData = new DataTransfer();
+      clipboardData.setData('text/plain', text);
+      field.dispatchEvent(new ClipboardEvent('paste', { clipboardData, bubbles: true, cancelable: true }));
+    }, 'S460N\ts460n\nS420N\ts420n\n');
+    await expect(cell(page, 'Material, steel 5')).toHaveValue('S420N');
+    await expect(cell(page, 'Modulus of elasticity E, steel 5')).toHaveValue('210000');
+    await cell(page, 'Yield strength f_y, S420N, step 1').fill('420');
+    await cell(page, 'Tensile strength f_u, S420N, step 1').fill('520');
+    await expect(page.getByText('None. It can be sent to review.')).toBeVisible();
+    await isSaved(page);
+  });
+
+  for (const width of WIDTHS) {
+    await page.setViewportSize({ width, height: 1000 });
+    await page.goto(`/library/material-set/${slug}/drafts/1`);
+    await isLive(page);
+    await expect(cell(page, 'Yield strength f_y, S420N, step 1')).toHaveValue('420');
+    await page.getByRole('button', { name: 'More of steel 2', exact: true }).click();
+    await expectSound(page, `material set at ${width}`);
+  }
+});

@@ -69,6 +69,7 @@ function GroupCategories({ group }: { readonly group: LoadGroup }) {
           heads={HEADS}
           widths={WIDTHS}
           rows={rows}
+          growth={{ list, blank: (document) => newCategory(document, group) }}
           more={(row) => <More group={group} row={row} count={count} />}
         />
       )}

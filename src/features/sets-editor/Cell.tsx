@@ -37,6 +37,7 @@ export function Cell({ row, column, name, place, noteId, onPaste }: CellProps) {
       autoComplete="off"
       spellCheck={false}
       inputMode={column.kind === 'number' ? 'decimal' : undefined}
+      placeholder={column.placeholder}
       readOnly={useReadOnly()}
       value={shown}
       onPaste={onPaste}

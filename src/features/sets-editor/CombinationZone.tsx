@@ -56,6 +56,7 @@ export function CombinationZone({ list, caption, children }: CombinationZoneProp
           heads={heads}
           widths={WIDTHS}
           rows={rows}
+          growth={{ list, blank: (document) => newCombination(document, list) }}
           below={(row) => <Expanded list={list} row={row} />}
           more={(row) => <More list={list} row={row} count={count} />}
         />

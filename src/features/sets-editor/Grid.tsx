@@ -1,10 +1,10 @@
-import { type ClipboardEvent, type ReactNode, useId, useState } from 'react';
+import { type ClipboardEvent, type CSSProperties, type ReactNode, useId, useState } from 'react';
 import { Button } from '@/components/ui/Button';
 import type { Pointer } from '@/features/author/edit';
 import { useReadOnly } from '@/features/author/fields';
 import { useDraft, useIsSelected, useSnapshot } from '@/features/author/use-editor';
 import { Cell } from './Cell';
-import { type Column, isTable, pastedRows, pasteEdits } from './cells';
+import { type Column, type Growth, grown, isTable, pastedRows, pasteEdits } from './cells';
 import { moveInGrid } from './grid-keys';
 
 export interface GridRow {
@@ -25,26 +25,40 @@ interface GridProps {
   readonly more?: (row: GridRow) => ReactNode;
   /** Under a row's first field. */
   readonly below?: (row: GridRow) => ReactNode;
+  /** A first column that is not typed into. */
+  readonly lead?: { readonly head: string; readonly width: string; readonly of: (row: GridRow) => ReactNode };
+  /** Where rows that were pasted beyond the last go. */
+  readonly growth?: Growth;
+  /** As CSS; where there is less room the table scrolls, but on a phone, where it stacks. */
+  readonly leastWidth?: string;
 }
 
 /** Entries of a set as a table of fields. */
-export function Grid({ caption, columns, heads = {}, widths, rows, more, below }: GridProps) {
+export function Grid({ caption, columns, heads = {}, widths, rows, more, below, lead, ...rest }: GridProps) {
   const store = useDraft();
   const [left, setLeft] = useState(0);
   const paste = (row: number, column: number) => (event: ClipboardEvent<HTMLInputElement>) => {
     const text = event.clipboardData.getData('text/plain');
     if (!isTable(text) || store.snapshot.readOnly) return;
     event.preventDefault();
+    const pasted = pastedRows(text);
     const targets = rows.slice(row).map(({ at }) => at);
-    const filled = pasteEdits(pastedRows(text), targets, columns.slice(column));
-    store.edit(...filled.edits);
+    const lacking = rest.growth ? pasted.length - targets.length : 0;
+    const more = rest.growth && grown(store.document, rest.growth, lacking);
+    const filled = pasteEdits(pasted, [...targets, ...(more?.rows ?? [])], columns.slice(column));
+    store.edit(...(more?.edits ?? []), ...filled.edits);
     setLeft(filled.left);
   };
   return (
-    <>
-      <table className="schedule stacking table-fixed md:[&_td]:px-4" onKeyDown={moveInGrid}>
+    <div className="md:overflow-x-auto">
+      <table
+        className="schedule stacking table-fixed md:min-w-(--least-width) md:[&_td]:px-4"
+        style={{ '--least-width': rest.leastWidth ?? 'auto' } as CSSProperties}
+        onKeyDown={moveInGrid}
+      >
         <caption className="max-md:block">{caption}</caption>
         <colgroup className="max-md:hidden">
+          {lead && <col style={{ width: lead.width }} />}
           {columns.map(({ key }) => (
             <col key={key} style={{ width: widths[key] }} />
           ))}
@@ -52,6 +66,7 @@ export function Grid({ caption, columns, heads = {}, widths, rows, more, below }
         </colgroup>
         <thead>
           <tr>
+            {lead && <th scope="col">{lead.head}</th>}
             {columns.map(({ key, label, kind }) => (
               <th key={key} scope="col" className={kind === 'text' ? undefined : 'figure'}>
                 {heads[key] ?? label}
@@ -65,7 +80,7 @@ export function Grid({ caption, columns, heads = {}, widths, rows, more, below }
           </tr>
         </thead>
         {rows.map((row, index) => (
-          <Row key={row.at} {...{ row, index, columns, more, below }} paste={paste} />
+          <Row key={row.at} {...{ row, index, columns, more, below, lead }} paste={paste} />
         ))}
       </table>
       {left > 0 && (
@@ -73,27 +88,29 @@ export function Grid({ caption, columns, heads = {}, widths, rows, more, below }
           {left === 1 ? 'One pasted line' : `${left} pasted lines`} had no row. Add rows, then paste again.
         </p>
       )}
-    </>
+    </div>
   );
 }
 
 interface RowProps extends Pick<GridProps, 'columns'> {
   readonly more: GridProps['more'] | undefined;
   readonly below: GridProps['below'] | undefined;
+  readonly lead: GridProps['lead'] | undefined;
   readonly row: GridRow;
   readonly index: number;
   readonly paste: (row: number, column: number) => (event: ClipboardEvent<HTMLInputElement>) => void;
 }
 
-function Row({ row, index, columns, more, below, paste }: RowProps) {
+function Row({ row, index, columns, more, below, lead, paste }: RowProps) {
   const store = useDraft();
   const isOpen = useIsSelected(row.at) && more !== undefined;
   const { faults, onBlur } = useRowFaults(row.at, columns);
   const noteId = useId();
-  const span = columns.length + (more ? 1 : 0);
+  const span = columns.length + (more ? 1 : 0) + (lead ? 1 : 0);
   return (
     <tbody data-part={row.at} onBlur={onBlur}>
       <tr data-chosen={isOpen || undefined}>
+        {lead && <th scope="row">{lead.of(row)}</th>}
         {columns.map((column, place) => (
           <td key={column.key} data-label={column.label} className="align-top! max-md:[&_input]:max-w-200">
             <Cell

@@ -1,4 +1,4 @@
-import { type ComponentType, useEffect, useRef, useState } from 'react';
+import { useEffect, useRef, useState } from 'react';
 import { ZoneHeading } from '@/components/ui/ZoneHeading';
 import { type Autosave, startAutosave } from '@/features/author/autosave.api';
 import { ChangeZone } from '@/features/author/ChangeZone';
@@ -12,47 +12,8 @@ import { DraftContext } from '@/features/author/use-editor';
 import { partName } from '@/features/desk/part-name';
 import { capital } from '@/features/desk/words';
 import { SET_READERS, type SetKind } from '@/features/review/read-set';
-import { CategoryZone } from './CategoryZone';
-import { CombinationZone } from './CombinationZone';
-import { FactorTools } from './FactorTools';
-import { CombinationHead, GroupZone } from './HeadZone';
-import { PatternZone } from './PatternZone';
-import { PreviewZone } from './PreviewZone';
-import type { SetPageData } from './page';
-
-interface ZoneProps {
-  readonly data: SetPageData;
-}
-
-type Zone = readonly [title: string, Fields: ComponentType<ZoneProps>];
-
-const ZONES: Readonly<
-  Partial<Record<SetKind, { readonly form: readonly Zone[]; readonly side: readonly Zone[] }>>
-> = {
-  'combination-set': {
-    form: [
-      ['Title', CombinationHead],
-      ['Groups of loads', GroupZone],
-      ['Combinations', StrengthZone],
-      ['Service combinations', ServiceZone],
-      ['ψ by category', CategoryZone],
-      ['How the loads stand', PatternZone],
-    ],
-    side: [['As they are used', ({ data }) => <PreviewZone issued={data.issued} />]],
-  },
-};
-
-function StrengthZone() {
-  return (
-    <CombinationZone list="/strength" caption="Every one is run on a member with loads of its groups">
-      <FactorTools />
-    </CombinationZone>
-  );
-}
-
-function ServiceZone() {
-  return <CombinationZone list="/service" caption="Criteria name one of them for each limit of deflection" />;
-}
+import type { ZoneProps } from './page';
+import { ZONES, type Zone } from './zones';
 
 /** A set is read in a moment: no worker is needed. */
 const checkerOf = (kind: SetKind): Checker => ({

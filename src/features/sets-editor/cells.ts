@@ -1,8 +1,9 @@
 /** Cells of a set's tables: what each shows of the document, and the edit that its text comes to. */
 import type { SetFactor } from '@/engine/combination';
 import { type DimensionName, readQuantity, toUnit } from '@/engine/quantity';
-import { type Edit, keysOf, type Pointer, valueAt } from '@/features/author/edit';
+import { applyEdit, type Edit, keysOf, listAt, type Pointer, valueAt } from '@/features/author/edit';
 import { factorText, readFactor } from '@/features/combination/factor';
+import type { Written } from '@/features/review/draft';
 import { readDecimal } from '@/lib/decimal';
 
 /** What a column holds, at `key` of its row: a pointer without its first slash, "factors/Q". */
@@ -11,6 +12,8 @@ export type Column = {
   readonly label: string;
   /** Left empty, it is no part of the document. */
   readonly isOptional?: boolean;
+  /** What stands where it is empty. */
+  readonly placeholder?: string | undefined;
 } & (
   | { readonly kind: 'text' }
   | { readonly kind: 'number' }
@@ -108,6 +111,30 @@ export function pasteEdits(
     }),
   );
   return { edits, left: Math.max(0, pasted.length - rows.length) };
+}
+
+/** How a list gets more rows: each made of the document with the ones before it. */
+export interface Growth {
+  readonly list: Pointer;
+  readonly blank: (document: Written) => object;
+}
+
+/** New rows at the end of a list: the edits that put them there, and where they are then. */
+export function grown(
+  document: Written,
+  { list, blank }: Growth,
+  count: number,
+): { readonly edits: readonly Edit[]; readonly rows: readonly Pointer[] } {
+  let after = document;
+  const edits: Edit[] = [];
+  const rows: Pointer[] = [];
+  for (let index = 0; index < count; index++) {
+    rows.push(`${list}/${listAt(after, list).length}`);
+    const edit: Edit = { do: 'insert', at: `${list}/-`, value: blank(after) };
+    edits.push(edit);
+    after = applyEdit(after, edit).document;
+  }
+  return { edits, rows };
 }
 
 /** The unit that most values of a column are written in; the first of them where several are as many. */

@@ -14,5 +14,9 @@ export async function readSetPage(
   if (!isSetKind(kind)) return null;
   const issued = revisions.find(({ state }) => state === 'issued');
   const before = issued && (await readDraft(actor, { kind, slug, number: issued.number }));
-  return { ...page, kind, issued: before?.document ?? null };
+  return {
+    ...page,
+    kind,
+    issued: before ? { revision: before.revision, document: before.document } : null,
+  };
 }

@@ -11,5 +11,10 @@ export interface SetPageData {
   /** Whether this person may change it. */
   readonly isEditable: boolean;
   /** The issued revision as its author writes it, to tell what changes; null where none is issued. */
-  readonly issued: Written | null;
+  readonly issued: { readonly revision: number; readonly document: Written } | null;
+}
+
+/** What each zone of the form is given. */
+export interface ZoneProps {
+  readonly data: SetPageData;
 }

@@ -5,6 +5,7 @@ import { seedMaterials } from './materials';
 import { seedMembers } from './members';
 import { findDemoPeople, foundDemoPractice } from './people';
 import { seedSections } from './sections';
+import { seedStock } from './stock';
 import { seedTemplates } from './templates';
 
 /**
@@ -16,6 +17,7 @@ export async function seedDemo(): Promise<boolean> {
   const people = await findDemoPeople();
   if (!people) return false;
   await seedSections(people);
+  await seedStock(people);
   await seedMaterials(people);
   await seedCombinations(people);
   await seedCriteria(people);

@@ -3,6 +3,10 @@ import { DRAWING_FORMATS } from '@/components/drawing/quantity-format';
 import { Button } from '@/components/ui/Button';
 import { ZoneHeading } from '@/components/ui/ZoneHeading';
 import type { UnitSystemName } from '@/engine/quantity';
+import { paths } from '@/paths';
+import { AddressLink } from './AddressLink';
+import type { NamedAction } from './actions';
+import { writeAddress } from './address';
 import type { EditionView } from './edition';
 import { outlineOf } from './outline';
 import type { SectionItem } from './section';
@@ -14,10 +18,13 @@ interface PinTrayProps {
   readonly editions: readonly EditionView[];
   readonly system: UnitSystemName;
   readonly onUnpinAll: () => void;
+  readonly actions: readonly NamedAction[];
+  readonly onAction: (action: NamedAction) => void;
 }
 
 /** The pinned sections on one ground line, at one scale; the chosen one while none is pinned. */
-export function PinTray({ pinned, chosen, editions, system, onUnpinAll }: PinTrayProps) {
+export function PinTray(props: PinTrayProps) {
+  const { pinned, chosen, editions, system, onUnpinAll, actions, onAction } = props;
   const axes = new Map(editions.map((edition) => [edition.table, edition.axes]));
   const isPinned = pinned.length > 0;
   const drawn = isPinned || chosen === null ? pinned : [chosen];
@@ -47,6 +54,21 @@ export function PinTray({ pinned, chosen, editions, system, onUnpinAll }: PinTra
           Pin up to four sections, with the ring in their row or the key P, and they are drawn here side by
           side.
         </p>
+      )}
+      {actions.length > 0 && (
+        <ul aria-label="From the chosen section" className="mt-10 text-schedule">
+          {actions.map((action) => (
+            <li key={action.key}>
+              <AddressLink
+                href={paths.sections + writeAddress(action.state)}
+                onFollow={() => onAction(action)}
+              >
+                {action.words}
+                <kbd className="ml-9">{action.key}</kbd>
+              </AddressLink>
+            </li>
+          ))}
+        </ul>
       )}
     </section>
   );

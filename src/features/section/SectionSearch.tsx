@@ -72,6 +72,7 @@ function Search(props: SearchProps) {
   const choosing = useColumns(state, setState, props.columns);
   useKeys({
     p: () => chosen && found.pin(chosen),
+    ...Object.fromEntries(found.actions.map((action) => [action.key.toLowerCase(), () => found.act(action)])),
     '[': () => found.nudge(-1),
     ']': () => found.nudge(1),
   });
@@ -88,6 +89,8 @@ function Search(props: SearchProps) {
         <PinTray
           {...{ chosen, editions, system }}
           pinned={answer.pinned}
+          actions={found.actions}
+          onAction={found.act}
           onUnpinAll={() => {
             setState((before) => ({ ...before, pins: [] }));
             document.querySelector<HTMLElement>('[role="grid"]')?.focus({ preventScroll: true });
@@ -152,6 +155,7 @@ function Schedule({
           shown={choosing.columns}
           pins={state.pins}
           at={found.at}
+          opensAtChosen={found.opensAtChosen}
           onChoose={found.choose}
           onPin={found.pin}
           onSort={(name) => setState((before) => withSort(before, name))}

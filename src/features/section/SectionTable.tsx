@@ -23,6 +23,8 @@ export interface SectionTableProps {
   /** Index of the chosen row. */
   readonly at: number;
   readonly uses: ReadonlyMap<string, number>;
+  /** True where the next answer is read from the chosen row on. */
+  readonly opensAtChosen: { current: boolean };
   readonly onChoose: (item: SectionItem) => void;
   readonly onPin: (item: SectionItem) => void;
   readonly onSort: (name: string) => void;
@@ -49,13 +51,17 @@ function moved(key: string, at: number, page: number, rows: number): number | nu
   return to === undefined || rows === 0 ? null : Math.max(0, Math.min(rows - 1, to));
 }
 
-/** Another answer is read from its top; the line above says which rows are in view. */
+/** Another answer is read from its top, or where it was asked for about the chosen row; the line above says which rows are in view. */
 function useReport(
-  { rows, total, query, onView, onNearEnd }: SectionTableProps,
-  { first, size, startAt }: ReturnType<typeof useRows>,
+  { rows, total, query, at, opensAtChosen, onView, onNearEnd }: SectionTableProps,
+  { first, size, startAt, showAround }: ReturnType<typeof useRows>,
 ) {
   // biome-ignore lint/correctness/useExhaustiveDependencies: not when the way to scroll is made anew
-  useEffect(() => startAt(0), [query]);
+  useEffect(() => {
+    if (opensAtChosen.current) showAround(at);
+    else startAt(0);
+    opensAtChosen.current = false;
+  }, [query]);
   const last = Math.min(rows.length, first + size);
   useEffect(() => onView(first + 1, last), [onView, first, last]);
   const isNearEnd = rows.length < total && last > rows.length - NEAR;

@@ -49,6 +49,7 @@ export function useRows(count: number) {
     size,
     height,
     show: (index: number) => virtualizer.scrollToIndex(index),
+    showAround: (index: number) => virtualizer.scrollToIndex(index, { align: 'center' }),
     startAt: (index: number) => virtualizer.scrollToOffset(index * row),
   };
 }

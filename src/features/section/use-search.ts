@@ -1,5 +1,6 @@
-import { useMemo, useState } from 'react';
+import { useMemo, useRef, useState } from 'react';
 import type { UnitSystemName } from '@/engine/quantity';
+import { type NamedAction, namedActions } from './actions';
 import { keyOf, MOST_PINS, type PageState, withPin } from './address';
 import { type Answer, isNearest } from './answer';
 import { nudged } from './RangeFilter';
@@ -18,6 +19,16 @@ export function useSearch(
     () => Math.max(0, chosenKey === null ? 0 : rows.findIndex((item) => keyOf(item) === chosenKey)),
     [rows, chosenKey],
   );
+  const chosen = rows[at] ?? null;
+  const opensAtChosen = useRef(false);
+  const actions = useMemo(() => (chosen ? namedActions(state, chosen, system) : []), [state, chosen, system]);
+  const act = (action: NamedAction | undefined) => {
+    if (!action || !chosen) return;
+    setChosenKey(keyOf(chosen));
+    opensAtChosen.current = action.opensAtIt;
+    setSaid('');
+    setState(() => action.state);
+  };
   const pin = (item: SectionItem) => {
     const next = withPin(state, keyOf(item));
     setSaid(next ? '' : `${MOST_PINS} sections are compared at most. Unpin one first.`);
@@ -26,7 +37,11 @@ export function useSearch(
   return {
     /** Index of the chosen row; the first one where none is chosen. */
     at,
-    chosen: rows[at] ?? null,
+    chosen,
+    actions,
+    act,
+    /** Set where the next answer is read from the chosen row on. */
+    opensAtChosen,
     choose: (item: SectionItem) => setChosenKey(keyOf(item)),
     pin,
     nudge: (turn: 1 | -1) => setState((before) => nudged(before, spread.depth, turn, system)),

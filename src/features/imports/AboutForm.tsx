@@ -1,6 +1,7 @@
 import { ChoiceField, Field, TextField } from '@/components/ui/Field';
 import type { Fault } from '@/lib/app-error';
 import type { About, TableChoice } from './imports';
+import { ABOUT_LABELS } from './words';
 
 export type Draft = Record<keyof About, string>;
 
@@ -26,6 +27,7 @@ export function AboutForm({ about, tables, faults, isFixed, onAbout }: AboutForm
   const known = tables.find(({ slug }) => slug === about.table);
   const set = (key: keyof About) => ({
     name: key,
+    label: ABOUT_LABELS[key],
     value: about[key],
     disabled: isFixed,
     error: faults.find(({ pointer }) => pointer === `/about/${key}`)?.message,
@@ -60,24 +62,18 @@ export function AboutForm({ about, tables, faults, isFixed, onAbout }: AboutForm
         <div className="grid grid-cols-[minmax(0,1fr)_96px] gap-10">
           <Field
             {...set('name')}
-            label="Name of the table"
-            error={set('name').error ?? set('table').error}
+            error={set('name').error ?? (set('table').error && 'Give it a name with Latin letters.')}
             onChange={({ target }) => onAbout({ ...about, name: target.value, table: slugOf(target.value) })}
           />
-          <Field {...set('reference')} label="Number" />
+          <Field {...set('reference')} />
         </div>
       )}
-      <Field {...set('supplier')} label="Supplier" help="The columns are remembered under this name." />
-      <Field {...set('standard')} label="Standard" placeholder="EN 10365:2017" />
-      <Field {...set('source')} label="Source document" placeholder="Catalogue, issue 7" />
-      <Field {...set('catalogue_date')} label="Day of the catalogue" type="date" />
-      <TextField
-        {...set('licence')}
-        label="Licence note"
-        rows={2}
-        help="On which terms the values may be kept and shown."
-      />
-      <TextField {...set('notes')} label="Notes" rows={2} help="Empty, or one to a line." />
+      <Field {...set('supplier')} help="The columns are remembered under this name." />
+      <Field {...set('standard')} placeholder="EN 10365:2017" />
+      <Field {...set('source')} placeholder="Catalogue, issue 7" />
+      <Field {...set('catalogue_date')} type="date" />
+      <TextField {...set('licence')} rows={2} help="On which terms the values may be kept and shown." />
+      <TextField {...set('notes')} rows={2} help="Empty, or one to a line." />
     </div>
   );
 }

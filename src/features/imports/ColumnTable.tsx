@@ -1,5 +1,5 @@
 import type { Answer, Field, MappedColumn, Mapping } from '@/features/section/import/contract';
-import { FIELD_NAMES, FIELDS, unitsOf, unitWords } from './fields';
+import { FIELD_NAMES, FIELDS, readsAs, unitsOf, unitWords } from './fields';
 import type { ImportView } from './imports';
 
 interface ColumnTableProps {
@@ -38,7 +38,8 @@ export function ColumnTable({ mapping, view, isFixed, onAnswer }: ColumnTablePro
             column={column}
             samples={samples.get(column.index) ?? []}
             guess={guesses.get(column.index)}
-            reads={view.recognised.preview[0]?.[column.index]}
+            reads={readsAs(view.recognised.preview[0]?.[column.index] ?? '', column, mapping.decimalMark)}
+            areAxesSaid={mapping.axes !== null}
             isFixed={isFixed}
             onAnswer={onAnswer}
           />
@@ -52,19 +53,22 @@ interface RowProps {
   readonly column: MappedColumn;
   readonly samples: readonly string[];
   readonly guess: ImportView['guesses'][number] | undefined;
-  readonly reads: string | undefined;
+  /** What the first row's cell is read as. */
+  readonly reads: string;
+  readonly areAxesSaid: boolean;
   readonly isFixed: boolean;
   readonly onAnswer: (answer: Answer) => void;
 }
 
-function ColumnRow({ column, samples, guess, reads, isFixed, onAnswer }: RowProps) {
+function ColumnRow({ column, samples, guess, reads, areAxesSaid, isFixed, onAnswer }: RowProps) {
   const { index, heading, field, unit } = column;
   const isNumber = field !== null && FIELDS[field].quantity !== null;
   const isAsked = isNumber && unit === null;
+  const waits = field === null && column.byAxes !== undefined && !areAxesSaid;
   // What a heading means by the axes is asked for in words.
   const isUnsure = field !== null && !column.byAxes && guess?.confidence === 'unsure';
   return (
-    <tr data-left-out={field === null || undefined} title={guess?.reason}>
+    <tr data-left-out={(field === null && !waits) || undefined} title={guess?.reason}>
       <th scope="row">{heading || `Column ${index + 1}`}</th>
       {[0, 1, 2].map((place) => (
         <td key={place} className="raw figure">
@@ -72,7 +76,7 @@ function ColumnRow({ column, samples, guess, reads, isFixed, onAnswer }: RowProp
         </td>
       ))}
       <td className="arrow">
-        <Arrow isDashed={field === null} />
+        <Arrow isDashed={field === null && !waits} />
       </td>
       <td className="goes">
         <select
@@ -85,7 +89,7 @@ function ColumnRow({ column, samples, guess, reads, isFixed, onAnswer }: RowProp
             onAnswer({ kind: 'field', column: index, value: (target.value || null) as Field | null })
           }
         >
-          <option value="">Leave out</option>
+          <option value="">{waits ? 'By its axes: see B' : 'Leave out'}</option>
           {FIELD_NAMES.map((name) => (
             <option key={name} value={name}>
               {FIELDS[name].label}
@@ -94,12 +98,8 @@ function ColumnRow({ column, samples, guess, reads, isFixed, onAnswer }: RowProp
         </select>
       </td>
       <UnitCell {...{ column, isFixed, onAnswer }} />
-      <td className="figure reads" data-asked={isAsked || undefined}>
-        {field === null
-          ? '–'
-          : isAsked
-            ? 'unit not said'
-            : `${reads ?? samples[0] ?? ''} ${unit ? unitWords(unit) : ''}`}
+      <td className="figure reads" data-asked={isAsked || waits || undefined}>
+        {waits ? 'axes not said' : isAsked ? 'unit not said' : reads}
       </td>
     </tr>
   );

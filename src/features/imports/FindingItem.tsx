@@ -9,6 +9,8 @@ export interface Deeds {
   readonly onAccept: (accept: Accept) => void;
   /** Nothing can be done now: somebody is at it, or may not. */
   readonly isOff: boolean;
+  /** The line that rows begin in. */
+  readonly firstRow: number;
 }
 
 interface FindingItemProps extends Deeds {
@@ -19,7 +21,7 @@ interface FindingItemProps extends Deeds {
 const MARKS = { error: '×', warning: '!', note: 'i' } as const;
 
 /** One finding: where it is, what was read and expected, why, and what can be done about it. */
-export function FindingItem({ finding, accepted, isOff, onFix, onAccept }: FindingItemProps) {
+export function FindingItem({ finding, accepted, isOff, firstRow, onFix, onAccept }: FindingItemProps) {
   const { key, severity, line, heading, designation, message, read, expected, formula } = finding;
   return (
     <li
@@ -38,7 +40,8 @@ export function FindingItem({ finding, accepted, isOff, onFix, onAccept }: Findi
       </span>
       <div className="min-w-0">
         <p className="wrap-anywhere">
-          <b className="font-semibold">{[designation, heading].filter(Boolean).join(', ')}</b> {message}
+          <Place {...{ designation, heading }} />
+          {message}
         </p>
         <Values {...{ read, expected, formula }} />
         {accepted ? (
@@ -46,11 +49,16 @@ export function FindingItem({ finding, accepted, isOff, onFix, onAccept }: Findi
             Accepted by {accepted.by}: <i>{accepted.reason}</i>
           </p>
         ) : (
-          !isOff && <Choices {...{ finding, onFix, onAccept }} />
+          !isOff && <Choices {...{ finding, firstRow, onFix, onAccept }} />
         )}
       </div>
     </li>
   );
+}
+
+function Place({ designation, heading }: Pick<Finding, 'designation' | 'heading'>) {
+  const words = [designation, heading].filter(Boolean).join(', ');
+  return words === '' ? null : <b className="font-semibold">{words}: </b>;
 }
 
 function Values({ read, expected, formula }: Pick<Finding, 'read' | 'expected' | 'formula'>) {
@@ -81,13 +89,14 @@ function Values({ read, expected, formula }: Pick<Finding, 'read' | 'expected' |
   );
 }
 
-type ChoicesProps = Pick<FindingItemProps, 'finding' | 'onFix' | 'onAccept'>;
+type ChoicesProps = Pick<FindingItemProps, 'finding' | 'firstRow' | 'onFix' | 'onAccept'>;
 
 /** What the report offers, then a value typed by hand, leaving the row out, or accepting it with a reason. */
-function Choices({ finding, onFix, onAccept }: ChoicesProps) {
+function Choices({ finding, firstRow, onFix, onAccept }: ChoicesProps) {
   const { key, line, column, fixes } = finding;
   const [isTyping, setTyping] = useState(false);
   const [isAccepting, setAccepting] = useState(false);
+  const isRow = line !== null && line >= firstRow;
   const drops = fixes.some(({ edit }) => edit.kind === 'drop_row');
   return (
     <div className="mt-4 flex flex-wrap items-center gap-x-14 gap-y-4">
@@ -101,7 +110,7 @@ function Choices({ finding, onFix, onAccept }: ChoicesProps) {
           Type another value
         </Button>
       )}
-      {line !== null && !drops && finding.severity === 'error' && (
+      {line !== null && !drops && isRow && finding.severity === 'error' && (
         <Button tone="text" onClick={() => onFix({ leave_out: [line] })}>
           Leave out line {line}
         </Button>

@@ -1,4 +1,4 @@
-import { useState } from 'react';
+import { useEffect, useState } from 'react';
 import { Button } from '@/components/ui/Button';
 import { useKeys } from '@/components/ui/use-keys';
 import type { Finding, FindingGroup } from '@/features/section/import/contract';
@@ -6,14 +6,16 @@ import { mayAccept } from '@/features/section/import/report';
 import { FileScale } from './FileScale';
 import { type Deeds, FindingItem, OneField } from './FindingItem';
 import type { ImportView } from './imports';
+import { type Place, shownFindings } from './place';
 import { causeWords, countWords } from './words';
 
 interface FindingListProps extends Deeds {
   readonly view: ImportView;
+  readonly place: Place;
 }
 
 /** What was found, by cause, over one scale of the file. */
-export function FindingList({ view, ...deeds }: FindingListProps) {
+export function FindingList({ view, place, ...deeds }: FindingListProps) {
   const groups = view.report?.groups ?? [];
   const all = groups.flatMap(({ findings }) => findings);
   const accepted = new Map(view.acceptances.map((one) => [one.key, one]));
@@ -21,8 +23,11 @@ export function FindingList({ view, ...deeds }: FindingListProps) {
   const notes = groups.filter(({ severity }) => severity === 'note');
   const shown = areNotesShown ? groups : groups.filter(({ severity }) => severity !== 'note');
   useKeys({ e: () => goToNext('error'), w: () => goToNext('warning') });
-  if (groups.length === 0)
-    return <p>Every rule was tried on every row, and nothing was found. The rows can become an edition.</p>;
+  // biome-ignore lint/correctness/useExhaustiveDependencies: when something was done and this is how it stands then
+  useEffect(() => {
+    if (!deeds.isOff) place.resume();
+  }, [deeds.isOff, view]);
+  if (groups.length === 0) return <None>{NOTHING[view.state] ?? NOTHING.findings}</None>;
   const lines = Math.max(view.rows ?? 0, ...all.map(({ line }) => line ?? 0));
   return (
     <>
@@ -32,6 +37,7 @@ export function FindingList({ view, ...deeds }: FindingListProps) {
           <Group key={group.group} {...{ group, accepted, ...deeds }} />
         ))}
       </div>
+      {shown.length === 0 && <None>No error and no warning is left.</None>}
       {notes.length > 0 && (
         <p className="mt-8">
           <Button tone="text" aria-expanded={areNotesShown} onClick={() => setNotesShown(!areNotesShown)}>
@@ -40,6 +46,15 @@ export function FindingList({ view, ...deeds }: FindingListProps) {
         </p>
       )}
     </>
+  );
+}
+
+/** Where the focus goes when the last finding is gone. */
+function None({ children }: { children: string }) {
+  return (
+    <p tabIndex={-1} data-no-finding>
+      {children}
+    </p>
   );
 }
 
@@ -53,7 +68,7 @@ function Group({ group, accepted, ...deeds }: GroupProps) {
   const ofAll = accepted.get(group.group);
   const open = findings.filter(({ key }) => !ofAll && !accepted.has(key));
   return (
-    <section aria-label={`${heading} ${causeWords(cause)}`.trim()}>
+    <section data-group aria-label={`${heading} ${causeWords(cause)}`.trim()}>
       {count > 1 && (
         <header className="flex flex-wrap items-center gap-x-14 gap-y-2 border-b border-rule py-6 text-schedule">
           <b className="font-semibold">
@@ -81,17 +96,17 @@ function Group({ group, accepted, ...deeds }: GroupProps) {
   );
 }
 
-interface ForAllProps extends Pick<Deeds, 'onFix' | 'onAccept'> {
+interface ForAllProps extends Pick<Deeds, 'onFix' | 'onAccept' | 'firstRow'> {
   readonly group: FindingGroup;
   /** Those of its findings that nothing was done about. */
   readonly open: readonly Finding[];
 }
 
 /** One press for all findings of a cause. */
-function ForAll({ group, open, onFix, onAccept }: ForAllProps) {
+function ForAll({ group, open, firstRow, onFix, onAccept }: ForAllProps) {
   const [isAccepting, setAccepting] = useState(false);
   const canFix = open.every(({ fixes }) => fixes.length > 0);
-  const lines = open.flatMap(({ line }) => (line === null ? [] : [line]));
+  const lines = open.flatMap(({ line }) => (line === null || line < firstRow ? [] : [line]));
   return (
     <>
       {canFix && (
@@ -125,17 +140,21 @@ function ForAll({ group, open, onFix, onAccept }: ForAllProps) {
   );
 }
 
-const items = () => [...document.querySelectorAll<HTMLElement>('[data-finding]')];
+const NOTHING: Partial<Readonly<Record<ImportView['state'], string>>> & { readonly findings: string } = {
+  findings: 'Every rule was tried on every row, and nothing was found. The rows can become an edition.',
+  committed: 'Every rule was tried on every row, and nothing was left. The rows are an edition.',
+  cancelled: 'Every rule was tried on every row, and nothing was found. The import was cancelled.',
+};
 
 function goTo(key: string): void {
-  const item = items().find(({ dataset }) => dataset['finding'] === key);
+  const item = shownFindings().find(({ dataset }) => dataset['finding'] === key);
   item?.focus({ preventScroll: true });
   item?.scrollIntoView({ block: 'center' });
 }
 
 /** The next one after where the focus is, round to the first. */
 function goToNext(severity: 'error' | 'warning'): void {
-  const all = items();
+  const all = shownFindings();
   const at = all.findIndex((item) => item.contains(document.activeElement));
   const next = [...all.slice(at + 1), ...all.slice(0, at + 1)].find(
     ({ dataset }) => dataset['severity'] === severity,

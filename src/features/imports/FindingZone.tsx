@@ -1,16 +1,20 @@
+import { useRef, useState } from 'react';
 import { ZoneHeading } from '@/components/ui/ZoneHeading';
 import type { Answer } from '@/features/section/import/contract';
 import type { Deeds } from './FindingItem';
 import { FindingList } from './FindingList';
 import type { ImportView } from './imports';
 import { ProgressZone } from './ProgressZone';
+import { usePlace } from './place';
 import { QuestionList } from './QuestionList';
+import { firstRowLine } from './report';
 import { countWords } from './words';
 
-interface FindingZoneProps extends Omit<Deeds, 'isOff'> {
+interface FindingZoneProps extends Omit<Deeds, 'isOff' | 'firstRow'> {
   readonly view: ImportView;
   readonly mapping: ImportView['mapping'];
   readonly underWay: boolean;
+  readonly isLost: boolean;
   readonly isEditable: boolean;
   readonly onAnswer: (answer: Answer) => void;
   readonly onCancel: () => void;
@@ -18,8 +22,16 @@ interface FindingZoneProps extends Omit<Deeds, 'isOff'> {
 
 /** First what only a person can say, then how far the check is, then what it found. */
 export function FindingZone(props: FindingZoneProps) {
-  const { view, underWay, isEditable, onFix, onAccept, onCancel } = props;
+  const { view, underWay, isLost, isEditable, onFix, onAccept, onCancel } = props;
   const { state } = view;
+  const place = usePlace();
+  const host = useRef<HTMLElement>(null);
+  /** The zone stays as long while its rows are checked again, so that nothing below it jumps. */
+  const [height, setHeight] = useState(0);
+  const keepPlace = () => {
+    place.keep();
+    setHeight(host.current?.offsetHeight ?? 0);
+  };
   if (state === 'mapping' || state === 'failed')
     return (
       <section className="zone">
@@ -27,19 +39,36 @@ export function FindingZone(props: FindingZoneProps) {
         <Asked {...props} />
       </section>
     );
+  if (!underWay && !view.report)
+    return (
+      <section className="zone">
+        <ZoneHeading letter="B">Rows with problems</ZoneHeading>
+        <p>
+          The import was cancelled before its rows were checked. The file is kept, and nothing became of it.
+        </p>
+      </section>
+    );
   return (
-    <section className="zone">
+    <section ref={host} className="zone" style={underWay ? { minHeight: height } : undefined}>
       <ZoneHeading letter="B" note={underWay ? undefined : <Counts view={view} />}>
         Rows with problems
       </ZoneHeading>
       {underWay ? (
-        <ProgressZone view={view} onCancel={view.may_act ? onCancel : undefined} />
+        <ProgressZone view={view} isLost={isLost} onCancel={view.may_act ? onCancel : undefined} />
       ) : (
         <FindingList
           view={view}
+          firstRow={firstRowLine(view.mapping)}
           isOff={!isEditable || state !== 'findings'}
-          onFix={onFix}
-          onAccept={onAccept}
+          place={place}
+          onFix={(fixes) => {
+            keepPlace();
+            onFix(fixes);
+          }}
+          onAccept={(accept) => {
+            keepPlace();
+            onAccept(accept);
+          }}
         />
       )}
     </section>

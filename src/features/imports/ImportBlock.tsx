@@ -7,6 +7,7 @@ import type { Question } from '@/features/section/import/contract';
 import { paths } from '@/paths';
 import type { Commit, Fixes, ImportView } from './imports';
 import { openWords } from './QuestionList';
+import { firstRowLine } from './report';
 import { STATE_LABELS } from './words';
 
 interface ImportBlockProps {
@@ -137,7 +138,8 @@ function othersOf({ view, isBusy, onFix, onCancel }: ImportBlockProps): readonly
   const { state, report } = view;
   if (state === 'committed' || state === 'cancelled' || !view.may_act || isBusy) return [];
   const errors = report?.groups.filter(({ severity }) => severity === 'error') ?? [];
-  const lines = [...new Set(errors.flatMap(({ findings }) => findings.flatMap(({ line }) => line ?? [])))];
+  const found = errors.flatMap(({ findings }) => findings.flatMap(({ line }) => line ?? []));
+  const lines = [...new Set(found)].filter((line) => line >= firstRowLine(view.mapping));
   const leave = {
     label: lines.length === 1 ? 'Leave out 1 row' : `Leave out ${lines.length} rows`,
     onPress: () => onFix({ leave_out: lines }),

@@ -1,9 +1,10 @@
+import { useEffect, useRef } from 'react';
 import { Notice } from '@/components/ui/Notice';
 import { SheetHead } from '@/components/ui/SheetHead';
 import type { Fault } from '@/lib/app-error';
 import { paths } from '@/paths';
 import type { ImportView } from './imports';
-import { countWords, DELIMITER_WORDS, ENCODING_WORDS, MARK_WORDS } from './words';
+import { ABOUT_LABELS, countWords, DELIMITER_WORDS, ENCODING_WORDS, MARK_WORDS } from './words';
 
 interface ImportHeadProps {
   readonly view: ImportView;
@@ -28,17 +29,7 @@ export function ImportHead({ view, mapping, problem }: ImportHeadProps) {
         title={title}
         facts={factsOf(view, mapping)}
       />
-      {problem && (
-        <Notice tone="error" title={problem.message}>
-          {problem.faults.length > 1 && (
-            <ul>
-              {problem.faults.map(({ pointer, message }) => (
-                <li key={pointer + message}>{`${fieldOf(pointer)}${message}`}</li>
-              ))}
-            </ul>
-          )}
-        </Notice>
-      )}
+      {problem && <ProblemNotice key={JSON.stringify(problem)} problem={problem} />}
       {error && (
         <Notice tone="error" title={error}>
           <p>
@@ -58,10 +49,40 @@ export function ImportHead({ view, mapping, problem }: ImportHeadProps) {
   );
 }
 
-/** "/about/catalogue_date" as it begins a line: "Catalogue date: ". */
-function fieldOf(pointer: string): string {
-  const name = /^\/about\/(\w+)$/.exec(pointer)?.[1]?.replaceAll('_', ' ');
-  return name ? `${name.charAt(0).toUpperCase()}${name.slice(1)}: ` : '';
+/** Why something was refused; it comes into view, since what was pressed may be far below. */
+function ProblemNotice({
+  problem: { message, faults },
+}: {
+  problem: NonNullable<ImportHeadProps['problem']>;
+}) {
+  const host = useRef<HTMLDivElement>(null);
+  useEffect(() => host.current?.scrollIntoView({ block: 'nearest' }), []);
+  // A new table's address is made from its name: one fault, not two.
+  const isNamed = !faults.some(({ pointer }) => pointer === '/about/name');
+  const shown = faults.filter(({ pointer }) => isNamed || pointer !== '/about/table');
+  if (shown.length < 2)
+    return (
+      <div ref={host}>
+        <Notice tone="error" title={shown[0] ? `${fieldOf(shown[0])}${shown[0].message}` : message} />
+      </div>
+    );
+  return (
+    <div ref={host}>
+      <Notice tone="error" title={`${shown.length} things are missing or wrong.`}>
+        <ul>
+          {shown.map((fault) => (
+            <li key={fault.pointer + fault.message}>{`${fieldOf(fault)}${fault.message}`}</li>
+          ))}
+        </ul>
+      </Notice>
+    </div>
+  );
+}
+
+/** The label of the field that a fault is of, as it begins a line. */
+function fieldOf({ pointer }: Fault): string {
+  const name = Object.entries(ABOUT_LABELS).find(([key]) => pointer === `/about/${key}`)?.[1];
+  return name ? `${name}: ` : '';
 }
 
 function factsOf(

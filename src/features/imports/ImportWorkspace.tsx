@@ -1,10 +1,11 @@
-import { useState } from 'react';
+import { type CSSProperties, useState } from 'react';
 import { ZoneHeading } from '@/components/ui/ZoneHeading';
-import type { Answer } from '@/features/section/import/contract';
+import type { Answer, Mapping } from '@/features/section/import/contract';
 import { answer, openQuestions } from '@/features/section/import/mapping';
 import { AboutForm, type Draft } from './AboutForm';
 import { ColumnTable } from './ColumnTable';
 import { FindingZone } from './FindingZone';
+import { FIELDS } from './fields';
 import { ImportBlock } from './ImportBlock';
 import { ImportHead } from './ImportHead';
 import type { About, ImportView, TableChoice } from './imports';
@@ -74,7 +75,7 @@ function useSaid({ view, act }: ReturnType<typeof useImport>, reference: string)
 /** A file on its way to be an edition: its columns, what was found in it, and what becomes of it. */
 export function ImportWorkspace({ practice, first, tables, reference }: ImportWorkspaceProps) {
   const found = useImport(first);
-  const { view, isBusy, problem, act, underWay } = found;
+  const { view, isBusy, problem, act, isLost, underWay } = found;
   const { mapping, about, setAbout, hasNews, say, check } = useSaid(found, reference);
   const { id, version, state } = view;
   const isEditable = view.may_act && !underWay && !isBusy && EDITABLE.includes(state);
@@ -84,8 +85,8 @@ export function ImportWorkspace({ practice, first, tables, reference }: ImportWo
     <>
       <ImportHead {...{ view, problem, mapping }} />
       <div className="import-two">
-        <section className="zone">
-          <ZoneHeading letter="A" note={matchedWords(view)}>
+        <section className="zone" style={{ '--columns': mapping.columns.length } as CSSProperties}>
+          <ZoneHeading letter="A" note={matchedWords(view, mapping)}>
             Columns
           </ZoneHeading>
           <div className="overflow-x-auto">
@@ -93,7 +94,7 @@ export function ImportWorkspace({ practice, first, tables, reference }: ImportWo
           </div>
         </section>
         <FindingZone
-          {...{ view, mapping, underWay, isEditable }}
+          {...{ view, mapping, underWay, isLost, isEditable }}
           onAnswer={say}
           onFix={fix}
           onAccept={(accept) => act(() => importApi.accept(id, version, accept))}
@@ -124,11 +125,19 @@ export function ImportWorkspace({ practice, first, tables, reference }: ImportWo
   );
 }
 
-function matchedWords({ recognised, mapping }: ImportView): string {
-  const matched = mapping.columns.filter(({ field }) => field !== null).length;
-  const { remembered } = recognised;
-  if (remembered) return `As ${remembered.supplier} was read last.`;
-  const language = recognised.language && LANGUAGE_WORDS[recognised.language];
-  const headings = language ? `, with ${language} headings` : '';
-  return `${matched} of ${mapping.columns.length} matched by name${headings}. Say what unit the file is in.`;
+/** How many columns are known, and what is left to be said of the others. */
+function matchedWords({ recognised: { remembered, language } }: ImportView, mapping: Mapping): string {
+  const { columns, axes } = mapping;
+  const matched = columns.filter(({ field }) => field !== null);
+  const waits = columns.filter(({ field, byAxes }) => field === null && byAxes && axes === null).length;
+  const hasOpenUnit = matched.some(({ field, unit }) => unit === null && field && FIELDS[field].quantity);
+  const headings = language ? LANGUAGE_WORDS[language] : undefined;
+  const known = remembered
+    ? `Read as the last file of ${remembered.supplier}.`
+    : `${matched.length} of ${columns.length} known by ${headings ? `their ${headings} headings` : 'name'}.`;
+  const rest = [
+    ...(waits > 0 ? [`${waits} wait for the axes.`] : []),
+    ...(hasOpenUnit ? ['Say the units that are missing.'] : []),
+  ];
+  return [known, ...rest].join(' ');
 }

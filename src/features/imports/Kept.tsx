@@ -96,6 +96,7 @@ function BringSource({ id, version, word, act }: BringSourceProps) {
         type="file"
         accept=".pdf,.png,.jpg,.jpeg,.txt"
         aria-label="The document that the values are from"
+        tabIndex={-1}
         className="sr-only"
         onChange={({ target }) => void bring(target.files?.[0])}
       />

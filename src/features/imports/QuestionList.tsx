@@ -1,10 +1,9 @@
 import { useId } from 'react';
-import { ChoiceSet, Radio } from '@/components/ui/Choice';
+import { Radio } from '@/components/ui/Choice';
 import type { Answer, Mapping, Question } from '@/features/section/import/contract';
 import { FIELDS } from './fields';
-import { ENCODING_WORDS } from './words';
+import { AXES_NAMES, ENCODING_WORDS } from './words';
 
-const AXES_WORDS = { en: 'EN', us: 'US', british: 'British before 2005' } as const;
 const SHAPE_WORDS: Readonly<Record<string, string>> = {
   i: 'I and H sections',
   channel: 'Channels',
@@ -50,7 +49,8 @@ function Asked({ question, mapping, isFixed, onAnswer }: AskedProps) {
   const offers = offersOf(question, mapping);
   if (offers.length === 0) return <p className="font-semibold text-error">{question.message}</p>;
   return (
-    <ChoiceSet legend={question.message}>
+    <fieldset className="min-w-0">
+      <legend className="mb-6 font-semibold">{question.message}</legend>
       {offers.map(({ answer, words, note, isChosen }) => (
         <Radio
           key={words}
@@ -63,7 +63,7 @@ function Asked({ question, mapping, isFixed, onAnswer }: AskedProps) {
           {note && <span className="block text-note text-ink-2">{note}</span>}
         </Radio>
       ))}
-    </ChoiceSet>
+    </fieldset>
   );
 }
 
@@ -86,7 +86,7 @@ function offersOf(question: Question, mapping: Mapping): readonly Offer[] {
     case 'axes':
       return question.choices.map(({ value, meaning }) => ({
         answer: { kind: 'axes', value },
-        words: AXES_WORDS[value],
+        words: AXES_NAMES[value],
         note: meaning,
         isChosen: mapping.axes === value,
       }));

@@ -59,27 +59,29 @@ export function Upload() {
       <p className="text-title">{sending ? sending.name : 'Drop the supplier’s file here'}</p>
       <p className="max-w-[60ch] text-ink-2">
         A table as text: comma, semicolon, tab or bar between the cells, with one line of headings. 50 MB at
-        most. The file is kept as it is, with its SHA-256; what is put right is layered over it.
+        most. The file is kept as it is, with its <span className="whitespace-nowrap">SHA-256</span>; what is
+        put right is layered over it.
       </p>
       <input
         ref={pick}
         type="file"
         accept=".csv,.txt,.tsv,text/csv,text/plain,text/tab-separated-values"
         aria-label="File of a section table"
+        tabIndex={-1}
         className="sr-only"
         onChange={({ target }) => {
           void send(target.files?.[0]);
           target.value = ''; // the same file may be chosen again once it is put right
         }}
       />
-      {sending ? (
-        <>
-          <progress value={sending.share} aria-label="Sent" className="import-progress w-full max-w-440" />
-          <Button onClick={stop}>Stop</Button>
-        </>
-      ) : (
-        <Button onClick={() => pick.current?.click()}>Choose a file</Button>
+      {sending && (
+        <progress value={sending.share} aria-label="Sent" className="import-progress w-full max-w-440" />
       )}
+      {sending?.share === 1 && <p role="status">It is here, and is looked through.</p>}
+      {/* One button, so that the focus stays where it was. */}
+      <Button onClick={sending ? stop : () => pick.current?.click()}>
+        {sending ? 'Stop' : 'Choose a file'}
+      </Button>
       <p role="alert" className="font-semibold text-error empty:hidden">
         {problem}
       </p>

@@ -11,7 +11,7 @@ import { isReferenceTaken } from '@/features/review/reference.server';
 import { createDraft } from '@/features/review/review.server';
 import { type Actor, findDocument } from '@/features/review/rows.server';
 import { answer, applyFix, mayAccept, openQuestions } from '@/features/section/import';
-import type { Finding } from '@/features/section/import/contract';
+import type { Finding, Mapping } from '@/features/section/import/contract';
 import { AppError, type Fault, invalid } from '@/lib/app-error';
 import { read } from '@/lib/read';
 import { publish } from '@/services/events';
@@ -29,6 +29,7 @@ import {
   type SaveMapping,
   type TableChoice,
 } from './imports';
+import { firstRowLine } from './report';
 import {
   acceptancesOf,
   findImport,
@@ -242,6 +243,7 @@ function chosenFixes(row: ImportRow, { apply, cells, leave_out }: Fixes): Chosen
       edit: { kind: 'set_cell', line, column, value },
     }),
   );
+  requireRows(row.mapping, leave_out);
   const dropped = leave_out.map(
     (line): Chosen => ({
       label: `Leave out line ${line}`,
@@ -250,6 +252,13 @@ function chosenFixes(row: ImportRow, { apply, cells, leave_out }: Fixes): Chosen
     }),
   );
   return [...offered, ...typed, ...dropped];
+}
+
+function requireRows(mapping: Mapping, lines: readonly number[]): void {
+  const at = lines.findIndex((line) => line < firstRowLine(mapping));
+  if (at < 0) return;
+  const message = `Line ${lines[at]} belongs to the headings. Put it right instead.`;
+  throw invalid([{ pointer: `/leave_out/${at}`, code: 'not_allowed', message }]);
 }
 
 const findingsOf = ({ report }: ImportRow): Map<string, Finding> =>

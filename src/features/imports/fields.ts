@@ -1,5 +1,6 @@
 import { type DimensionName, unitText } from '@/engine/quantity';
-import type { Field } from '@/features/section/import/contract';
+import { readCell } from '@/features/section/import/cells';
+import type { DecimalMark, Field, MappedColumn } from '@/features/section/import/contract';
 import { offeredUnits } from '@/features/section/import/mapping';
 
 interface FieldWords {
@@ -48,3 +49,18 @@ export function unitsOf(field: Field | null, own: string | null): readonly strin
 
 /** "cm4" or "cm^4" as it is printed: "cm⁴". */
 export const unitWords = (unit: string): string => unitText(plain(unit));
+
+/** What a cell of a column is read as, with its unit; as it stands there where it is no number yet. */
+export function readsAs(cell: string, { field, unit }: MappedColumn, mark: DecimalMark | null): string {
+  if (field === null) return '–';
+  const { quantity } = FIELDS[field];
+  if (quantity === null || unit === null || mark === null) return cell;
+  const value = readCell(cell, { quantity, unit, scale: 1 }, mark);
+  if (typeof value !== 'number') return `${cell} ${unitWords(unit)}`;
+  const decimals = cell.split(mark)[1]?.match(/^\d+/)?.[0].length ?? 0;
+  const digits = value.toLocaleString('en-GB', {
+    minimumFractionDigits: decimals,
+    maximumFractionDigits: Math.max(decimals, 6),
+  });
+  return `${digits.replaceAll(',', '\u202f')} ${unitWords(unit)}`;
+}

@@ -1,4 +1,4 @@
-import type { Finding } from '@/features/section/import/contract';
+import type { Finding, Mapping } from '@/features/section/import/contract';
 import type { ImportView } from './imports';
 
 /** Who answered for a finding, and why; of itself or with all of its cause. Undefined where nobody did. */
@@ -9,3 +9,7 @@ export function answerOf(acceptances: ImportView['acceptances']) {
     return found && `accepted by ${found.by}: ${found.reason}`;
   };
 }
+
+/** The line below the headings and the units: those above can be put right, and never left out. */
+export const firstRowLine = ({ headingLine, unitLine }: Mapping): number =>
+  Math.max(headingLine, unitLine ?? 0) + 1;

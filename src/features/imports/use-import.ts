@@ -43,28 +43,38 @@ export function useImport(first: ImportView) {
     [take],
   );
 
-  useLive(view, setView, take);
-  return { view, isBusy, problem, act, underWay: isUnderWay(view) };
+  const isLost = useLive(view, setView, take);
+  return { view, isBusy, problem, act, isLost, underWay: isUnderWay(view) };
 }
 
-/** Looks again at every message of progress, and from time to time; after a reload or a lost connection as well. */
+/**
+ * Looks again at every message of progress, and from time to time; after a reload or a lost connection as well. Whether
+ * the server could not be reached the last time.
+ */
 function useLive(
   view: ImportView,
   setView: (change: (before: ImportView) => ImportView) => void,
   take: (acted: Acted) => void,
-): void {
+): boolean {
   const { id } = view;
   const isLive = isUnderWay(view);
+  const [isLost, setLost] = useState(false);
   useEffect(() => {
     if (!isLive) return;
     let isOver = false;
     const look = async () => {
       const progress = await readProgress(id);
-      if (isOver || !progress) return;
+      if (isOver) return;
+      setLost(progress === null);
+      if (progress === null) return;
       if (isUnderWay(progress)) setView((before) => ({ ...before, ...progress }));
       else {
+        const acted = await importApi.read(id);
+        if (isOver) return;
+        setLost(acted.kind === 'refused');
+        if (acted.kind === 'refused') return; // asked again
         isOver = true;
-        take(await importApi.read(id));
+        take(acted);
       }
     };
     const stop = onProgress((about) => {
@@ -78,4 +88,5 @@ function useLive(
       clearInterval(timer);
     };
   }, [id, isLive, setView, take]);
+  return isLost;
 }

@@ -1,4 +1,5 @@
-import type { Cause } from '@/features/section/import/contract';
+import type { Axes, Cause } from '@/features/section/import/contract';
+import type { About } from './imports';
 import type { ImportPhase, ImportState } from './state';
 
 export const STATE_LABELS: Readonly<Record<ImportState, string>> = {
@@ -53,3 +54,23 @@ export const sizeWords = (bytes: number): string =>
     : bytes < 1e6
       ? `${Math.round(bytes / 1000)} kB`
       : `${(bytes / 1e6).toFixed(1)} MB`;
+
+/** What is asked of a table, as its fields are called. */
+export const ABOUT_LABELS: Readonly<Record<keyof About, string>> = {
+  table: 'Name of the table',
+  name: 'Name of the table',
+  reference: 'Number',
+  supplier: 'Supplier',
+  standard: 'Standard',
+  source: 'Source document',
+  catalogue_date: 'Day of the catalogue',
+  licence: 'Licence note',
+  conventions: 'Conventions',
+  notes: 'Notes',
+};
+
+export const AXES_NAMES: Readonly<Record<Axes, string>> = {
+  en: 'EN',
+  us: 'US',
+  british: 'British before 2005',
+};

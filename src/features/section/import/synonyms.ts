@@ -188,7 +188,7 @@ export const REGIONAL: Readonly<Record<Axes, Readonly<Record<string, NumberField
 
 /** What each convention means, for the question. */
 export const AXES_WORDS: Readonly<Record<Axes, string>> = {
-  en: 'EN: y–y is the strong axis, z–z the weak one; W_el elastic, W_pl plastic',
-  us: 'US: x–x is the strong axis, y–y the weak one; S elastic, Z plastic',
-  british: 'British before 2005: x–x is strong, y–y weak; Z elastic, S plastic',
+  en: 'y–y is the strong axis, z–z the weak one; Wel is elastic, Wpl plastic',
+  us: 'x–x is the strong axis, y–y the weak one; S is elastic, Z plastic',
+  british: 'x–x is the strong axis, y–y the weak one; Z is elastic, S plastic',
 };

@@ -27,6 +27,8 @@ function listenForKeys() {
       if (!filter) return;
       event.preventDefault();
       filter.focus();
+    } else if (press) {
+      document.querySelector<HTMLElement>(`a[data-key="${CSS.escape(press.key)}"]`)?.click();
     }
   });
   for (const button of document.querySelectorAll('[data-open-keys]'))

@@ -12,9 +12,14 @@ type Props = {
 };
 
 /** What the outline shows, in words. */
-export function outlineLabel({ name, outline, axes }: OutlinedSection, format: DrawingFormat): string {
+export function outlineLabel(
+  { name, outline, axes, detail }: OutlinedSection,
+  format: DrawingFormat,
+): string {
   const size = (mm: number) => figure(format, 'sectionSize', mm / 1000);
-  return `${name}: depth ${size(outline.height)}, width ${size(outline.width)}; ${axes.major} is the major axis, ${axes.minor} the minor.`;
+  const sizes = `${name}: depth ${size(outline.height)}, width ${size(outline.width)}; ${axes.major} is the major axis, ${axes.minor} the minor.`;
+  const principal = detail?.principal ? ' u and v are the principal axes.' : '';
+  return sizes + principal + (detail?.shearCentre ? ' M is the shear centre.' : '');
 }
 
 /** One section to scale. */

@@ -52,3 +52,17 @@ export const EditionChangesView = z.strictObject({
   total: z.int(),
 });
 export type EditionChangesView = z.output<typeof EditionChangesView>;
+
+export type Compared = Readonly<Record<ComparedColumn, number | null>>;
+
+const ROUNDING = 1e-9; // of the value: what binary leaves of a column that was written twice
+
+/** The columns in which two rows differ, as the comparison of whole editions finds them. */
+export const valuesChanged = (older: Compared, newer: Compared): RowDifference['values'] =>
+  COMPARED.flatMap((column): RowDifference['values'] => {
+    const [from, to] = [older[column], newer[column]];
+    if (from === to) return [];
+    if (from === null || to === null) return [{ column, from, to, share: null }];
+    if (Math.abs(to - from) <= ROUNDING * Math.abs(from)) return [];
+    return [{ column, from, to, share: from === 0 ? null : (to - from) / from }];
+  });

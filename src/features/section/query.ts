@@ -68,6 +68,17 @@ const SHAPE_NAMES: Readonly<Record<string, readonly SectionShape[]>> = {
   timber: ['rectangle'],
 };
 
+/** The groups that every shape stands in once, as the filter draws them. */
+const SHAPE_GROUPS = ['i', 'channel', 'tee', 'angle', 'hollow', 'timber', 'other'] as const;
+
+/** The group of a shape, by the name that the search takes. */
+export const shapeGroup = (shape: SectionShape): string =>
+  SHAPE_GROUPS.find((group) => SHAPE_NAMES[group]?.includes(shape)) ?? shape;
+
+/** The shapes that people take for one kind with this one. */
+export const shapeGroupOf = (shape: SectionShape): readonly SectionShape[] =>
+  SHAPE_NAMES[shapeGroup(shape)] ?? [shape];
+
 const emptyIsNone = (value: unknown) =>
   typeof value === 'string' && value.trim() === '' ? undefined : value;
 const bound = z.preprocess(emptyIsNone, z.coerce.number().optional());

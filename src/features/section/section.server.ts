@@ -1,6 +1,5 @@
-import { and, count, desc, eq, ne } from 'drizzle-orm';
-import { job } from '@/db/schema/job';
-import { revision } from '@/db/schema/library';
+import { and, count, eq, inArray, ne } from 'drizzle-orm';
+import type { Tx } from '@/db/client';
 import { member } from '@/db/schema/member';
 import { section } from '@/db/schema/section';
 import { withPractice } from '@/db/tenancy';
@@ -53,33 +52,51 @@ export interface SectionKey {
   readonly table: string;
   /** However typed. */
   readonly designation: string;
-  /** Without it the issued edition, else the newest. */
+  /** Without it the issued edition, else the last that has the section. */
   readonly edition?: number | undefined;
 }
 
 /** One section of one edition, with what the table does not show; 404 where there is none. */
 export function findSection(user: User, key: SectionKey): Promise<SectionDetail> {
   requirePermission(user, 'library.read');
-  return withPractice(user, async (tx) => {
-    const found = await findRevision(tx, user.practiceId, {
-      kind: SECTION_TABLE,
-      slug: key.table,
-      number: key.edition,
-    });
-    if (!found) throw notFound('This section table');
-    const [row] = await selectRows(tx, {})
-      .where(
-        and(
-          eq(section.practiceId, user.practiceId),
-          eq(section.revisionId, found.revisionId),
-          eq(section.designationKey, designationKey(key.designation)),
-        ),
-      )
-      .limit(1);
-    if (!row) throw notFound('This section');
-    const history = await historyOf(tx, user.practiceId, found.documentId);
-    return { item: toItem(row), edition: toEditionView(found, history) };
+  return withPractice(user, async (tx) => (await openSection(tx, user.practiceId, key)).detail);
+}
+
+interface OpenSection {
+  readonly detail: SectionDetail;
+  readonly revisionId: string;
+  /** Every edition of its table, newest first. */
+  readonly history: readonly LibraryRevision[];
+}
+
+/** The section that a key means, with its table's editions; 404 where there is none. */
+export async function openSection(tx: Tx, practiceId: string, key: SectionKey): Promise<OpenSection> {
+  const standing = await findRevision(tx, practiceId, {
+    kind: SECTION_TABLE,
+    slug: key.table,
+    number: key.edition,
   });
+  if (!standing) throw notFound('This section table');
+  const history = await historyOf(tx, practiceId, standing.documentId);
+  const former = history.filter(({ state }) => state === 'superseded' || state === 'withdrawn');
+  const editions = key.edition === undefined ? [standing, ...former] : [standing];
+  const rows = await selectRows(tx, {}).where(
+    and(
+      eq(section.practiceId, practiceId),
+      inArray(
+        section.revisionId,
+        editions.map(({ revisionId }) => revisionId),
+      ),
+      eq(section.designationKey, designationKey(key.designation)),
+    ),
+  );
+  for (const edition of editions) {
+    const row = rows.find(({ revisionId }) => revisionId === edition.revisionId);
+    if (!row) continue;
+    const detail = { item: toItem(row), edition: toEditionView(edition, history) };
+    return { detail, revisionId: edition.revisionId, history };
+  }
+  throw notFound('This section');
 }
 
 const DAY = new Intl.DateTimeFormat('en-GB', {
@@ -130,49 +147,6 @@ export function usesBySection(
       .innerJoin(section, and(eq(section.practiceId, member.practiceId), eq(section.id, member.sectionId)))
       .where(and(eq(member.practiceId, user.practiceId), ne(member.status, 'removed')))
       .groupBy(section.tableSlug, section.designation)
-      .execute(),
-  );
-}
-
-export interface SectionUse {
-  readonly job: string;
-  readonly jobName: string;
-  readonly mark: string;
-  readonly title: string;
-  readonly edition: number;
-}
-
-const SHOWN = 50;
-
-/** The members made of a section, whatever its edition, in jobs that the person may see; the last changed first. */
-export function membersOf(user: User, { table, designation }: SectionKey): Promise<SectionUse[]> {
-  requirePermission(user, 'library.read');
-  return withPractice(user, (tx) =>
-    tx
-      .select({
-        job: job.number,
-        jobName: job.name,
-        mark: member.mark,
-        title: member.title,
-        edition: revision.number,
-      })
-      .from(member)
-      .innerJoin(section, and(eq(section.practiceId, member.practiceId), eq(section.id, member.sectionId)))
-      .innerJoin(
-        revision,
-        and(eq(revision.practiceId, section.practiceId), eq(revision.id, section.revisionId)),
-      )
-      .innerJoin(job, and(eq(job.practiceId, member.practiceId), eq(job.id, member.jobId)))
-      .where(
-        and(
-          eq(member.practiceId, user.practiceId),
-          eq(section.tableSlug, table),
-          eq(section.designationKey, designationKey(designation)),
-          ne(member.status, 'removed'),
-        ),
-      )
-      .orderBy(desc(member.changedAt))
-      .limit(SHOWN)
       .execute(),
   );
 }

@@ -1,21 +1,25 @@
 import type { DrawingFormat } from '../format';
 import { textWidth } from '../geometry/text-width';
 import { ticksPath } from '../marks/paths';
+import { OutlineDetails } from './OutlineDetails';
 import type { OutlinedSection } from './outlined';
 
 type Props = { section: OutlinedSection; scale: number; cx: number; ground: number; format: DrawingFormat };
 
 function Axes({ section, scale, cx, ground }: Omit<Props, 'format'>) {
-  const { outline, axes, minorAt, majorAt } = section;
+  const { outline, axes, minorAt, majorAt, detail } = section;
   const [half, tall] = [(outline.width * scale) / 2, outline.height * scale];
   const minor = cx - half + (minorAt ?? outline.width / 2) * scale;
   const middle = ground - (majorAt ?? outline.height / 2) * scale;
-  const left = { x: cx - half - 12, textAnchor: 'end', className: 'note' } as const;
+  // A shear centre outside the back has the axis drawn through it.
+  const outside = Math.max(0, -(detail?.shearCentre?.x ?? 0) * scale);
+  const start = cx - half - 8 - outside;
+  const left = { x: start - 4, textAnchor: 'end', className: 'note' } as const;
   return (
     <>
       <path
         className="centre-line"
-        d={`M${minor} ${ground - tall - 10}V${ground + 24}M${cx - half - 8} ${middle}H${cx + half + 8}`}
+        d={`M${minor} ${ground - tall - 10}V${ground + 24}M${start} ${middle}H${cx + half + 8}`}
       />
       <text {...left} y={middle - 1}>
         <tspan className="symbol">{axes.major}</tspan>
@@ -80,6 +84,15 @@ export function SectionFigure(props: Props) {
       />
       <Axes {...props} />
       <Sizes {...props} />
+      {section.detail && (
+        <OutlineDetails
+          detail={section.detail}
+          scale={scale}
+          left={cx - (width * scale) / 2}
+          ground={ground}
+          format={props.format}
+        />
+      )}
     </>
   );
 }

@@ -9,7 +9,24 @@ export type OutlinedSection = {
   minorAt?: number | undefined;
   /** The major axis from the bottom, mm, where it is not in the middle, as in a tee. */
   majorAt?: number | undefined;
+  /** What only a section that stands alone has room for. */
+  detail?: OutlineDetail | undefined;
 };
+
+/** A place in mm, x from the left edge and y up from the bottom. */
+type Place = { x: number; y: number };
+
+export type OutlineDetail = {
+  centroid: Place;
+  /** Where it is known and not the centroid. */
+  shearCentre: Place | null;
+  /** Axis u, radians anticlockwise of the major axis; `reach` mm is half the smaller size over all. */
+  principal: { angle: number; reach: number } | null;
+  thicknesses: readonly Thickness[];
+};
+
+/** A wall, web or flange from edge to edge, mm: across at a height, or upwards at a distance from the left. */
+export type Thickness = { along: 'across' | 'up'; from: number; to: number; at: number };
 
 /** px per mm at which every section of a row fits its slot; all are drawn at this one scale. */
 export function commonScale(

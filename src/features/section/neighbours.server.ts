@@ -1,0 +1,71 @@
+import { and, asc, between, desc, eq, gte, inArray, lte, type SQL, sql } from 'drizzle-orm';
+import type { Tx } from '@/db/client';
+import { section } from '@/db/schema/section';
+import { designationKey, designationParts } from '@/engine/section';
+import type { Neighbour, NeighbourPair, Neighbours } from './page';
+import { shapeGroupOf } from './query';
+import { issuedRows } from './search.server';
+import type { SectionItem } from './section';
+
+/** As deep: within this share of the depth, as sections of one nominal depth are. */
+const AS_DEEP = 0.03;
+
+/** The sections next to one in its series and in its depth. */
+export async function findNeighbours(tx: Tx, practiceId: string, item: SectionItem): Promise<Neighbours> {
+  const issued = await issuedRows(tx, practiceId);
+  const key = designationKey(item.designation);
+  const inSeries = and(issued, eq(section.tableSlug, item.table), seriesOf(item.designation));
+  const inDepth = and(
+    issued,
+    inArray(section.shape, [...shapeGroupOf(item.shape)]),
+    between(section.depthMm, item.depth_mm * (1 - AS_DEEP), item.depth_mm * (1 + AS_DEEP)),
+  );
+  const pair = async (where: SQL | undefined): Promise<NeighbourPair> => ({
+    lighter: await next(tx, where, item.mass_kg_m, key, 'lighter'),
+    heavier: await next(tx, where, item.mass_kg_m, key, 'heavier'),
+  });
+  return { series: await pair(inSeries), depth: await pair(inDepth) };
+}
+
+/** The first beyond a mass; of equal masses the order is that of their keys, so that every one is passed on the way. */
+async function next(
+  tx: Tx,
+  where: SQL | undefined,
+  mass: number,
+  key: string,
+  way: 'lighter' | 'heavier',
+): Promise<Neighbour | null> {
+  const isLighter = way === 'lighter';
+  // Said twice, since an index is entered by the bound alone.
+  const bound = isLighter ? lte(section.massKgM, mass) : gte(section.massKgM, mass);
+  const named = sql`(${section.massKgM}, ${section.designationKey} collate "C")`;
+  const beyond = sql`${named} ${isLighter ? sql`<` : sql`>`} (${mass}::float8, ${key}::text collate "C")`;
+  const turn = isLighter ? desc : asc;
+  const [found] = await tx
+    .select({
+      table: section.tableSlug,
+      designation: section.designation,
+      depth_mm: section.depthMm,
+      mass_kg_m: section.massKgM,
+    })
+    .from(section)
+    .where(and(where, bound, beyond))
+    .orderBy(turn(section.massKgM), turn(sql`${section.designationKey} collate "C"`))
+    .limit(1);
+  return found ?? null;
+}
+
+/**
+ * The series of a designation: sections that differ in their last size alone (W12x26 and W12x30, 100x100x8 and
+ * 100x100x10), or in the only one that they have (IPE 270 and IPE 300). Keys of a series begin alike.
+ */
+function seriesOf(designation: string): SQL | undefined {
+  const { family, sizes } = designationParts(designation);
+  const alike = sizes.slice(0, -1);
+  const first = family + alike.map((one) => `${one}x`).join('');
+  return and(
+    sql`starts_with(${section.designationKey}, ${first})`,
+    sql`${section.family} = ${family}`,
+    sql`cardinality(${section.sizes}) = ${sizes.length}`,
+  );
+}

@@ -88,7 +88,7 @@ function FaultyLine({ line, found, tableName, onMend, onLeaveOut }: FaultyLinePr
           Line {line}:{' '}
           <b className="font-semibold">{found[0]?.before.texts.designation || 'no designation'}</b>
         </span>
-        <Button tone="text" onClick={() => onLeaveOut(new Set([line]))} aria-label={`Leave line ${line} out`}>
+        <Button tone="text" onClick={() => onLeaveOut(new Set([line]))} aria-label={`Leave out line ${line}`}>
           Leave out
         </Button>
       </div>

@@ -88,7 +88,7 @@ function RowActions({ designation, onChange, onRemove }: RowActionsProps) {
             <Button
               tone="text"
               onClick={async () => setProblem(await onRemove())}
-              aria-label={`Take ${designation} out`}
+              aria-label={`Take out ${designation}`}
             >
               Take out
             </Button>

@@ -23,10 +23,11 @@ const COMPARED: readonly SectionField[] = [
   'r_minor_cm',
 ];
 
-/** "+18 %": how much more than the first. */
+/** "+18 %": how much more than the first; nothing of what the first has not. */
 function difference(item: SectionItem, first: SectionItem, field: SectionField): string {
   const [value, from] = [measureOf(item, field), measureOf(first, field)];
-  if (value === null || from === null) return '';
+  if (value === null || from === null || from === 0) return '';
+  if (value === from) return '0 %';
   const percent = formatNumber((value / from - 1) * 100, { places: 0 });
   return `${value >= from ? `+${percent}` : percent} %`;
 }

@@ -48,6 +48,7 @@ export function NumberBound(props: NumberBoundProps) {
           if (typed.trim() === '') onChange(name, null);
           else if (Number.isFinite(read(typed))) onChange(name, fromShown(field, read(typed), system));
         }}
+        onKeyDown={(event) => event.key === 'Escape' && setText(null)}
         onBlur={() => !isBad && setText(null)}
       />
       {withUnit && (

@@ -3,7 +3,7 @@ import { Button } from '@/components/ui/Button';
 import { useKeys } from '@/components/ui/use-keys';
 import type { UnitSystemName } from '@/engine/quantity';
 import type { Supplier } from '@/features/stock/stock';
-import { cleared, type PageState, withSort } from './address';
+import { cleared, keyOf, type PageState, withSort } from './address';
 import type { Answer, FirstAnswer } from './answer';
 import { ColumnChooser } from './ColumnChooser';
 import { Comparison } from './Comparison';
@@ -122,6 +122,8 @@ function Schedule({
   const [view, setView] = useState({ first: 1, last: 0 });
   const onView = useCallback((first: number, last: number) => setView({ first, last }), []);
   const uses = useMemo(() => new Map(props.uses), [props.uses]);
+  // As they are drawn and numbered: a pin of what is no longer there has no number.
+  const pins = useMemo(() => answer.pinned.map(keyOf), [answer.pinned]);
   return (
     <>
       <ResultLine
@@ -148,12 +150,11 @@ function Schedule({
         <NoSection state={state} onClear={() => setState(cleared)} />
       ) : (
         <SectionTable
-          {...{ system, uses, onView }}
+          {...{ system, uses, pins, onView }}
           rows={answer.rows}
           total={answer.total}
           query={answer.query}
           shown={choosing.columns}
-          pins={state.pins}
           at={found.at}
           opensAtChosen={found.opensAtChosen}
           onChoose={found.choose}

@@ -69,6 +69,7 @@ test('from the catalogue to a calc sheet: a propped cantilever with an overhang'
     await page.getByLabel('Designation').fill('ipe300');
     const row = page.getByRole('row', { name: /IPE 300/ });
     await row.getByRole('button', { name: /Use/ }).click();
+    await page.getByText('Change the basis').click();
     await page.getByLabel('Material').selectOption({ label: 'S355' });
     await expect(page.getByText('Bending stress').first()).toBeVisible();
   });

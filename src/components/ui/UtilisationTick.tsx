@@ -14,7 +14,7 @@ const TICK = { passes: 'stroke-ink', close: 'stroke-ochre', fails: 'stroke-error
 export function UtilisationTick({ ratio, width = 74 }: UtilisationTickProps) {
   const state = utilisationState(ratio);
   const fails = state === 'fails';
-  const x = tickPlace(ratio) * width;
+  const x = Math.round(tickPlace(ratio) * width * 100) / 100; // where server and browser differ by a last digit, this does not
   const limit = LIMIT_PLACE * width;
   return (
     <span className="inline-flex items-center gap-8 whitespace-nowrap">

@@ -13,7 +13,7 @@ import { releaseKey, toRedundant, toRelease } from '@/features/template/release'
 import type { About } from '@/features/why/subject';
 import { WhyScope } from '@/features/why/WhyScope';
 import { paths } from '@/paths';
-import { BasisFields } from './BasisFields';
+import { BasisFields, BasisSummary, useBasis } from './BasisFields';
 import { BasisZone } from './BasisZone';
 import { ChecksZone, NotChecked } from './ChecksZone';
 import { ElevationZone } from './ElevationZone';
@@ -181,6 +181,7 @@ function CauseNotice({ causes, onPutBack }: CauseNoticeProps) {
 }
 
 function Inputs({ data, work: { draft, change, faults } }: PartProps) {
+  const basis = useBasis({ draft, data, faults });
   return (
     <fieldset disabled={!data.mayEdit} className="min-w-0 border-b border-ink">
       <legend className="sr-only">Inputs</legend>
@@ -192,8 +193,9 @@ function Inputs({ data, work: { draft, change, faults } }: PartProps) {
         groups={GROUPS}
         onChange={(symbol, value) => change({ raw: { ...draft.raw, [symbol]: value } })}
       >
-        <BasisFields draft={draft} data={data} faults={faults} onChange={change} />
+        <BasisSummary draft={draft} data={data} basis={basis} mayEdit={data.mayEdit} />
       </ParameterFields>
+      <BasisFields draft={draft} data={data} faults={faults} basis={basis} onChange={change} />
     </fieldset>
   );
 }

@@ -63,6 +63,8 @@ export const section = pgTable(
     // Of every edition: pages are read in their order, and counted from them alone.
     index('section_by_depth').on(table.practiceId, table.depthMm, table.massKgM, table.revisionId),
     index('section_by_mass').on(table.practiceId, table.massKgM, table.depthMm, table.revisionId),
+    // What stands next in a series by its mass.
+    index('section_by_series').on(table.practiceId, table.revisionId, table.family, table.massKgM),
     check('section_shape', oneOf(table.shape, SECTION_SHAPES)),
     tenantPolicy('section'),
   ],

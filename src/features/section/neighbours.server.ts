@@ -11,12 +11,20 @@ import type { SectionItem } from './section';
 const AS_DEEP = 0.03;
 
 /** The sections next to one in its series and in its depth. */
-export async function findNeighbours(tx: Tx, practiceId: string, item: SectionItem): Promise<Neighbours> {
-  const issued = await issuedRows(tx, practiceId);
+export async function findNeighbours(
+  tx: Tx,
+  practiceId: string,
+  item: SectionItem,
+  /** The edition of its table that is in force. */
+  issuedId: string | undefined,
+): Promise<Neighbours> {
   const key = designationKey(item.designation);
-  const inSeries = and(issued, eq(section.tableSlug, item.table), seriesOf(item.designation));
+  const inSeries =
+    issuedId === undefined
+      ? sql`false`
+      : and(eq(section.practiceId, practiceId), eq(section.revisionId, issuedId), seriesOf(item.designation));
   const inDepth = and(
-    issued,
+    await issuedRows(tx, practiceId),
     inArray(section.shape, [...shapeGroupOf(item.shape)]),
     between(section.depthMm, item.depth_mm * (1 - AS_DEEP), item.depth_mm * (1 + AS_DEEP)),
   );
@@ -57,15 +65,19 @@ async function next(
 
 /**
  * The series of a designation: sections that differ in their last size alone (W12x26 and W12x30, 100x100x8 and
- * 100x100x10), or in the only one that they have (IPE 270 and IPE 300). Keys of a series begin alike.
+ * 100x100x10), or in the only one that they have (IPE 270 and IPE 300).
  */
 function seriesOf(designation: string): SQL | undefined {
   const { family, sizes } = designationParts(designation);
   const alike = sizes.slice(0, -1);
-  const first = family + alike.map((one) => `${one}x`).join('');
   return and(
-    sql`starts_with(${section.designationKey}, ${first})`,
-    sql`${section.family} = ${family}`,
+    eq(section.family, family),
     sql`cardinality(${section.sizes}) = ${sizes.length}`,
+    alike.length === 0
+      ? undefined
+      : sql`${section.sizes}[1:${sql.raw(String(alike.length))}] = array[${sql.join(
+          alike.map((one) => sql`${one}::float8`),
+          sql`, `,
+        )}]`,
   );
 }

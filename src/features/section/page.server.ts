@@ -35,7 +35,12 @@ export function readSectionPage(user: User, key: SectionKey, usesFrom: number): 
           ...became(before && (rows.get(before.revisionId) ?? null), rows.get(one.revisionId) ?? null),
         };
       }),
-      neighbours: await findNeighbours(tx, practiceId, detail.item),
+      neighbours: await findNeighbours(
+        tx,
+        practiceId,
+        detail.item,
+        history.find(({ state }) => state === 'issued')?.revisionId,
+      ),
       uses: await usesOf(tx, practiceId, key, usesFrom),
     };
   });

@@ -1,0 +1,1 @@
+CREATE INDEX "section_by_series" ON "section" USING btree ("practice_id","revision_id","family","mass_kg_m");

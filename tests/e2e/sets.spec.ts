@@ -179,3 +179,50 @@ test('a librarian writes a material set: values in their units, what cannot be, 
     await expectSound(page, `material set at ${width}`);
   }
 });
+
+test('a librarian writes criteria: against which combinations, over what, at most how much', async ({
+  page,
+  baseURL,
+}) => {
+  test.setTimeout(120_000);
+  const slug = `criteria-of-the-journey-${STAMP}`;
+  await enter(page, baseURL, LIBRARIAN);
+  await page.goto(`/library/new?kind=criteria&from=${encodeURIComponent('steel-elastic-en 1')}`);
+  await page.getByLabel('Address').fill(slug);
+  await main(page, 'Begin the draft').click();
+  await expect(page).toHaveURL(/\/drafts\/1$/);
+  await isLive(page);
+  await page.getByLabel('Reference').fill(`Limits of ${STAMP % 100_000}`);
+  const limits = page.getByRole('region', { name: 'Limits of deflection as used' });
+
+  await test.step('the set is chosen among the issued ones, and what it does not have is said at its limit', async () => {
+    const set = page.getByLabel('Combination set', { exact: true });
+    const strength = await set.locator('option', { hasText: 'ASCE 7-16, strength' }).getAttribute('value');
+    const eurocode = await set.inputValue();
+    await set.selectOption(strength);
+    await expect(page.getByRole('alert').getByText('has no service combination').first()).toBeVisible();
+    await expect(limits.getByText('The set has no such combination.').first()).toBeVisible();
+    await set.selectOption(eurocode);
+    await expect(page.getByText('None. It can be sent to review.')).toBeVisible();
+  });
+
+  // Characteristic, imposed leading, without G: Q + ψ0 S, of snow 0.5.
+  await test.step('a limit is typed with its cap, and stands beside the form in numbers', async () => {
+    await cell(page, 'Span over, limit 1').fill('480');
+    await cell(page, 'At most, limit 1').fill('1 in');
+    await cell(page, 'Span over, limit 2').focus();
+    await expect(cell(page, 'At most, limit 1')).toHaveValue('25.4');
+    await expect(limits.getByText('L/480, a/180 of overhangs')).toBeVisible();
+    await expect(limits.getByText('Q + 0.5 S', { exact: true }).first()).toBeVisible();
+    await isSaved(page);
+  });
+
+  for (const width of WIDTHS) {
+    await page.setViewportSize({ width, height: 1000 });
+    await page.goto(`/library/criteria/${slug}/drafts/1`);
+    await isLive(page);
+    await expect(cell(page, 'At most, limit 1')).toHaveValue('25.4');
+    await page.getByRole('button', { name: 'More of limit 2', exact: true }).click();
+    await expectSound(page, `criteria at ${width}`);
+  }
+});

@@ -24,21 +24,43 @@ export function Cell({ row, column, name, place, noteId, onPaste }: CellProps) {
   const isFaulty = useFaultIn(`${row}/${column.key}`) !== undefined;
   const [typed, setTyped] = useState('');
   const shown = sameValue(cellValue(typed, column), value) ? typed : cellText(value, column);
-  const isFigure = column.kind !== 'text';
+  const isReadOnly = useReadOnly();
+  const shared = {
+    'data-at': `${row}/${column.key}`,
+    'data-row': place[0],
+    'data-column': place[1],
+    'aria-label': `${column.label}, ${name}`,
+    'aria-invalid': isFaulty || undefined,
+    'aria-describedby': isFaulty ? noteId : undefined,
+  };
+  if (column.kind === 'choice')
+    return (
+      <select
+        {...shared}
+        className="input md:pointer-fine:min-h-28 md:text-schedule"
+        disabled={isReadOnly}
+        value={shown}
+        onChange={({ target }) => store.edit(cellEdit(row, target.value, column))}
+      >
+        {!column.choices.some((one) => one.value === shown) && (
+          <option value={shown}>{shown || 'Choose'}</option>
+        )}
+        {column.choices.map((one) => (
+          <option key={one.value} value={one.value}>
+            {one.label}
+          </option>
+        ))}
+      </select>
+    );
   return (
     <input
-      className={`input md:pointer-fine:min-h-28 md:text-schedule ${isFigure ? 'text-right' : ''}`}
-      data-at={`${row}/${column.key}`}
-      data-row={place[0]}
-      data-column={place[1]}
-      aria-label={`${column.label}, ${name}`}
-      aria-invalid={isFaulty || undefined}
-      aria-describedby={isFaulty ? noteId : undefined}
+      {...shared}
+      className={`input md:pointer-fine:min-h-28 md:text-schedule ${column.kind === 'text' ? '' : 'text-right'}`}
       autoComplete="off"
       spellCheck={false}
       inputMode={column.kind === 'number' ? 'decimal' : undefined}
       placeholder={column.placeholder}
-      readOnly={useReadOnly()}
+      readOnly={isReadOnly}
       value={shown}
       onPaste={onPaste}
       onBlur={() => setTyped(cellText(value, column))}

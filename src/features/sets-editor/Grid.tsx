@@ -68,7 +68,11 @@ export function Grid({ caption, columns, heads = {}, widths, rows, more, below, 
           <tr>
             {lead && <th scope="col">{lead.head}</th>}
             {columns.map(({ key, label, kind }) => (
-              <th key={key} scope="col" className={kind === 'text' ? undefined : 'figure'}>
+              <th
+                key={key}
+                scope="col"
+                className={kind === 'text' || kind === 'choice' ? undefined : 'figure'}
+              >
                 {heads[key] ?? label}
               </th>
             ))}
@@ -112,16 +116,18 @@ function Row({ row, index, columns, more, below, lead, paste }: RowProps) {
       <tr data-chosen={isOpen || undefined}>
         {lead && <th scope="row">{lead.of(row)}</th>}
         {columns.map((column, place) => (
-          <td key={column.key} data-label={column.label} className="align-top! max-md:[&_input]:max-w-200">
-            <Cell
-              row={row.at}
-              column={column}
-              name={row.name}
-              place={[index, place]}
-              noteId={noteId}
-              onPaste={paste(index, place)}
-            />
-            {place === 0 && below?.(row)}
+          <td key={column.key} data-label={column.label} className="align-top! ">
+            <div className="min-w-0 max-md:w-200 max-md:flex-none">
+              <Cell
+                row={row.at}
+                column={column}
+                name={row.name}
+                place={[index, place]}
+                noteId={noteId}
+                onPaste={paste(index, place)}
+              />
+              {place === 0 && below?.(row)}
+            </div>
           </td>
         ))}
         {more && (

@@ -68,9 +68,13 @@ export function GroupZone() {
         <ChoiceAt at="/snow/basis" label="Snow loads are" choices={SNOW_CHOICES} />
         <ValueAt
           at="/xi"
-          label="ξ"
+          label={
+            <>
+              Reduction <span className="normal-case">ξ</span>
+            </>
+          }
           as={{ kind: 'number', isOptional: true }}
-          help="Reduction of the adverse permanent load, 0.85; empty where no factor has ξ."
+          help="Of the adverse permanent load, 0.85; empty where no factor has it."
         />
       </div>
       <LongTextAt

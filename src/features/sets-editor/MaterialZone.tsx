@@ -205,7 +205,7 @@ function TimberFields({ kind, at }: { readonly kind: Exclude<Kind, 'steel'>; rea
       <ChoiceAt at={`${at}/product`} label="Product" choices={PRODUCTS[kind]} />
       <ValueAt
         at={`${at}/expansion`}
-        label="Thermal expansion α"
+        label="Thermal expansion"
         as={{ kind: 'quantity', dimension: 'expansion', unit: usualUnit(kind, EXPANSION.dimension) }}
         help={`In ${usualUnit(kind, EXPANSION.dimension)}, where no unit is given.`}
       />

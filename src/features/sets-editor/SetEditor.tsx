@@ -12,14 +12,17 @@ import { DraftContext } from '@/features/author/use-editor';
 import { partName } from '@/features/desk/part-name';
 import { capital } from '@/features/desk/words';
 import { SET_READERS, type SetKind } from '@/features/review/read-set';
+import { type IssuedSet, referredFaults } from './criteria';
 import type { ZoneProps } from './page';
+import { UnknownFields } from './UnknownFields';
 import { ZONES, type Zone } from './zones';
 
 /** A set is read in a moment: no worker is needed. */
-const checkerOf = (kind: SetKind): Checker => ({
+const checkerOf = (kind: SetKind, sets: readonly IssuedSet[]): Checker => ({
   check: (document, answer) => {
     const reading = SET_READERS[kind](document);
-    answer(reading.ok ? [] : reading.faults);
+    const faults = reading.ok ? [] : reading.faults;
+    answer(kind === 'criteria' ? [...faults, ...referredFaults(document, sets)] : faults);
   },
   stop: () => {},
 });
@@ -28,23 +31,23 @@ const letterOf = (index: number): string => String.fromCharCode('A'.charCodeAt(0
 
 /** The draft of a set: its tables as a form, what it comes to beside it, saved while it is written. */
 export function SetEditor({ data }: ZoneProps) {
-  const { draft, isEditable, kind } = data;
+  const { draft, isEditable, kind, sets } = data;
   const [store] = useState(
     () => new DraftStore(draft, !isEditable, (document, at) => capital(partName(at, document))),
   );
   const saver = useRef<Autosave | null>(null);
   useEffect(() => {
-    const stopCheck = startCheck(store, checkerOf(kind));
+    const stopCheck = startCheck(store, checkerOf(kind, sets));
     const autosave = isEditable ? startAutosave(store, draft) : null;
     saver.current = autosave;
     return () => {
       stopCheck();
       autosave?.stop();
     };
-  }, [store, draft, isEditable, kind]);
+  }, [store, draft, isEditable, kind, sets]);
   useUndoKeys(store);
   const autosave = () => saver.current;
-  const { form, side } = ZONES[kind] ?? { form: [], side: [] };
+  const { form, side } = ZONES[kind];
   const zones: readonly Zone[] = [...form, ['What is new', ChangeZone]];
   return (
     <DraftContext value={store}>
@@ -67,6 +70,7 @@ export function SetEditor({ data }: ZoneProps) {
                   Faults
                 </ZoneHeading>
                 <FaultZone none="None. It can be sent to review." />
+                <UnknownFields />
                 <UndoButtons />
               </section>
               {side.map(([title, Fields], index) => (

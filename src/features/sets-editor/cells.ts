@@ -16,6 +16,7 @@ export type Column = {
   readonly placeholder?: string | undefined;
 } & (
   | { readonly kind: 'text' }
+  | { readonly kind: 'choice'; readonly choices: readonly { value: string; label: string }[] }
   | { readonly kind: 'number' }
   | { readonly kind: 'factor' }
   /** A quantity string; a number alone takes `unit`. */
@@ -44,6 +45,7 @@ export function cellText(value: unknown, column: Column): string {
         ? String(Number(toUnit(value, column.unit).toPrecision(DIGITS)))
         : String(value);
     case 'text':
+    case 'choice':
     case 'number':
       return typeof value === 'object' ? JSON.stringify(value) : String(value);
   }
@@ -62,6 +64,7 @@ export function cellValue(text: string, column: Column): unknown {
   const isEmpty = text.trim() === '' || (column.kind === 'factor' && /^\s*[–-]\s*$/.test(text));
   switch (column.kind) {
     case 'text':
+    case 'choice':
       return isEmpty && column.isOptional ? undefined : text;
     case 'number':
       return isEmpty ? undefined : (readDecimal(text) ?? text);

@@ -24,9 +24,9 @@ function stepOf(
 }
 
 const cellIn = (table: Element, row: number, column: number) =>
-  table.querySelector<HTMLInputElement>(`input[data-row="${row}"][data-column="${column}"]`);
+  table.querySelector<HTMLElement>(`[data-row="${row}"][data-column="${column}"]`);
 
-/** For `onKeyDown` of the table: its cells are inputs with data-row and data-column. */
+/** For `onKeyDown` of the table: its cells have data-row and data-column. */
 export function moveInGrid(event: KeyboardEvent<HTMLElement>): void {
   const { target, currentTarget, key } = event;
   if (event.ctrlKey || event.metaKey || event.altKey || event.shiftKey) return;
@@ -42,7 +42,7 @@ export function moveInGrid(event: KeyboardEvent<HTMLElement>): void {
   // Enter at the last row does nothing: there is no form that it could send.
   event.preventDefault();
   cell?.focus();
-  cell?.select();
+  if (cell instanceof HTMLInputElement) cell.select();
 }
 
 /** The first field of a row takes the focus once it is drawn; a touch screen’s keyboard stays away. */

@@ -1,3 +1,5 @@
+import { withPractice } from '@/db/tenancy';
+import { issuedSets } from '@/features/combination/combination.server';
 import type { DocumentView } from '@/features/review/document';
 import { readDraft } from '@/features/review/draft.server';
 import { isSetKind } from '@/features/review/read-set';
@@ -8,7 +10,7 @@ import type { SetPageData } from './page';
 export async function readSetPage(
   actor: Actor,
   { slug, revisions }: Pick<DocumentView, 'slug' | 'revisions'>,
-  page: Omit<SetPageData, 'kind' | 'issued'>,
+  page: Omit<SetPageData, 'kind' | 'issued' | 'sets'>,
 ): Promise<SetPageData | null> {
   const { kind } = page.draft;
   if (!isSetKind(kind)) return null;
@@ -18,5 +20,15 @@ export async function readSetPage(
     ...page,
     kind,
     issued: before ? { revision: before.revision, document: before.document } : null,
+    sets: kind === 'criteria' ? await setsToReferTo(actor) : [],
   };
 }
+
+const setsToReferTo = (actor: Actor) =>
+  withPractice(actor, async (tx) =>
+    (await issuedSets(tx, actor.practiceId)).map(({ slug, number, document }) => ({
+      slug,
+      revision: number,
+      document,
+    })),
+  );

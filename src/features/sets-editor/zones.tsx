@@ -4,8 +4,10 @@ import type { SetKind } from '@/features/review/read-set';
 import { CategoryZone } from './CategoryZone';
 import { ChangesZone } from './ChangesZone';
 import { CombinationZone } from './CombinationZone';
+import { CriteriaHead, DeflectionZone, ReferenceZone, StressZone } from './CriteriaZones';
 import { FactorTools } from './FactorTools';
 import { CombinationHead, GroupZone, TitleFields } from './HeadZone';
+import { LimitPreview } from './LimitPreview';
 import { BandZone, MaterialZone } from './MaterialZone';
 import { PatternZone } from './PatternZone';
 import { PreviewZone } from './PreviewZone';
@@ -19,7 +21,7 @@ interface Form {
   readonly side: readonly Zone[];
 }
 
-export const ZONES: Readonly<Partial<Record<SetKind, Form>>> = {
+export const ZONES: Readonly<Record<SetKind, Form>> = {
   'combination-set': {
     form: [
       ['Title', CombinationHead],
@@ -40,6 +42,18 @@ export const ZONES: Readonly<Partial<Record<SetKind, Form>>> = {
       ['Timber by American grades', () => <MaterialZone kind="timber_nds" />],
     ],
     side: [['Changed', ChangesZone]],
+  },
+  criteria: {
+    form: [
+      ['Title', CriteriaHead],
+      ['Combinations', ReferenceZone],
+      ['Stresses', StressZone],
+      ['Deflections', DeflectionZone],
+    ],
+    side: [
+      ['As they are used', LimitPreview],
+      ['Changed', ChangesZone],
+    ],
   },
 };
 

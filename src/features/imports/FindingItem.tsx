@@ -3,6 +3,7 @@ import { Button } from '@/components/ui/Button';
 import type { Finding } from '@/features/section/import/contract';
 import { mayAccept } from '@/features/section/import/report';
 import type { Accept, Fixes, ImportView } from './imports';
+import { Symbols } from './Symbols';
 
 export interface Deeds {
   readonly onFix: (fixes: Partial<Fixes>) => void;
@@ -41,7 +42,7 @@ export function FindingItem({ finding, accepted, isOff, firstRow, onFix, onAccep
       <div className="min-w-0">
         <p className="wrap-anywhere">
           <Place {...{ designation, heading }} />
-          {message}
+          <Symbols text={message} />
         </p>
         <Values {...{ read, expected, formula }} />
         {accepted ? (
@@ -82,7 +83,9 @@ function Values({ read, expected, formula }: Pick<Finding, 'read' | 'expected' |
       {formula !== null && (
         <div>
           <dt className="sr-only">by</dt>
-          <dd className="inline">{formula}</dd>
+          <dd className="inline">
+            <Symbols text={formula} />
+          </dd>
         </div>
       )}
     </dl>

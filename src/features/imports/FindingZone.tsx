@@ -82,8 +82,13 @@ function Counts({ view: { report } }: { view: ImportView }) {
   if (!report) return null;
   return (
     <>
-      <b className="font-semibold text-error">{counted(report.errors, 'error')}</b>,{' '}
-      <b className="font-semibold text-ochre-ink">{counted(report.warnings, 'warning')}</b>
+      <b className={report.errors > 0 ? 'font-semibold text-error' : 'font-normal'}>
+        {counted(report.errors, 'error')}
+      </b>
+      ,{' '}
+      <b className={report.warnings > 0 ? 'font-semibold text-ochre-ink' : 'font-normal'}>
+        {counted(report.warnings, 'warning')}
+      </b>
     </>
   );
 }

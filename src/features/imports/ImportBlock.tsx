@@ -2,6 +2,7 @@ import { useState } from 'react';
 import type { BlockAction } from '@/components/ui/BlockActions';
 import { ChoiceField, TextField } from '@/components/ui/Field';
 import { TitleBlock } from '@/components/ui/TitleBlock';
+import { TitleStrip } from '@/components/ui/TitleStrip';
 import { CHANGE_CLASSES, CONSEQUENCES } from '@/features/review/review';
 import type { Question } from '@/features/section/import/contract';
 import { paths } from '@/paths';
@@ -43,21 +44,25 @@ export function ImportBlock(props: ImportBlockProps) {
     value: said[name],
     onChange: ({ target }: { target: { value: string } }) => setSaid({ ...said, [name]: target.value }),
   });
+  const action = actionOf(props, isReady, said);
+  const identity = {
+    kind: 'Section table',
+    title: table?.name ?? view.file.name,
+    status: edition?.state ?? 'draft',
+    statusWord: edition ? undefined : 'No edition yet',
+    reference: table?.reference,
+    revision: edition ? String(edition.number) : undefined,
+    revisionLabel: 'Edn',
+  } as const;
   return (
     <aside className="flex min-w-0 flex-col justify-end">
       <TitleBlock
+        {...identity}
         org={practice}
         orgNote={STATE_LABELS[state]}
-        kind="Section table"
-        title={table?.name ?? view.file.name}
         by={by}
         date={DAY.format(new Date(at))}
-        status={edition?.state ?? 'draft'}
-        statusWord={edition ? undefined : 'No edition yet'}
-        reference={table?.reference}
-        revision={edition ? String(edition.number) : undefined}
-        revisionLabel="Edn"
-        action={actionOf(props, isReady, said)}
+        action={action}
         others={othersOf(props)}
       >
         {isReady && (
@@ -79,6 +84,7 @@ export function ImportBlock(props: ImportBlockProps) {
           </div>
         )}
       </TitleBlock>
+      <TitleStrip {...identity} action={action} />
     </aside>
   );
 }

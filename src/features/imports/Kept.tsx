@@ -56,9 +56,9 @@ export function Kept({ view, isEditable, act }: KeptProps) {
             What was put right: {fixes.length}
           </summary>
           <ol className="mt-4 list-decimal pl-20">
-            {fixes.map(({ label, by, at }) => (
-              <li key={`${at} ${label}`}>
-                {label} <span className="text-ink-2">({by})</span>
+            {fixes.map(({ label, place, by, at }) => (
+              <li key={`${at} ${place} ${label}`}>
+                {label} <span className="text-ink-2">({[place, by].filter(Boolean).join(', ')})</span>
               </li>
             ))}
           </ol>

@@ -202,7 +202,7 @@ export const ImportView = z.strictObject({
   acceptances: z.array(
     z.strictObject({ key: z.string(), reason: z.string(), by: z.string(), at: z.iso.datetime() }),
   ),
-  fixes: z.array(z.strictObject({ label: z.string(), by: z.string(), at: z.string() })),
+  fixes: z.array(z.strictObject({ label: z.string(), place: z.string(), by: z.string(), at: z.string() })),
   error: z.string().nullable(),
   /** Another import of the very same file, the newest. */
   twin: z

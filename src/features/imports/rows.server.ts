@@ -209,11 +209,17 @@ export async function toView(tx: Tx, actor: Actor, id: string): Promise<ImportVi
     unchecked: report !== null && report.version !== row.version,
     open: report && openIn(report, acceptances),
     acceptances,
-    fixes: row.fixes.map(({ label, by, at }) => ({ label, by, at })),
+    fixes: row.fixes.map(({ label, findings, by, at }) => ({ label, place: placeOf(findings), by, at })),
     error: row.error,
     twin: await twinOf(tx, row),
     may_act: may(actor, 'library.import'),
   };
+}
+
+/** Where what was put right stands: its line, or its column. */
+function placeOf([found]: FixRecord['findings']): string {
+  if (!found) return '';
+  return found.line === null ? found.heading : `line ${found.line}`;
 }
 
 /** Errors, and warnings that nobody has answered for. */

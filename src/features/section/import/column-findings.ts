@@ -1,3 +1,4 @@
+import { unitText } from '@/engine/quantity';
 import { sectionProperties, TABULATED, type TabulatedName } from '@/engine/section';
 import type { FileFacts, Finding, Mapping, NumberField } from './contract';
 import { findingOf } from './finding';
@@ -117,7 +118,7 @@ function columnSlip(
 ): void {
   const { index, heading } = column;
   const times = Number(ratio.toPrecision(3));
-  const formula = `median of given over computed is ${times}, in ${agreeing} of ${of} rows within 2 %`;
+  const formula = `given over computed is ${times} in the median, and within 2 % of it in ${agreeing} of ${of} rows`;
   if (slip) {
     const { unit, factor, words, message } = slip;
     const edit = { kind: 'set_column_unit', column: index, unit: unit ?? column.unit, factor } as const;
@@ -131,7 +132,9 @@ function columnSlip(
       formula,
     } as const;
     const said = `The whole column: ${message.charAt(0).toLowerCase()}${message.slice(1)}`;
-    found.findings.push(findingOf({ ...base, read: column.unit, expected: words, message: said, fixes }));
+    found.findings.push(
+      findingOf({ ...base, read: unitText(column.unit), expected: words, message: said, fixes }),
+    );
     found.corrections.push({ column: index, factor: slip.correction, lines: null });
     store.scale(column.field, slip.correction, null);
     return;

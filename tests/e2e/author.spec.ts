@@ -309,6 +309,26 @@ test.describe('the page of a draft', () => {
       await expect(beamOf(page).getByRole('option', { selected: true })).toHaveCount(1);
     });
 
+    await test.step('what is placed by the keys has the focus, and what is beside it when it is taken away', async () => {
+      const options = beamOf(page).getByRole('option');
+      const before = await options.count();
+      const hinge = beamOf(page).getByRole('option', { name: /^Hinge/ });
+      await page.getByRole('toolbar').getByRole('button', { name: 'Hinge' }).focus();
+      await page.keyboard.press('Enter');
+      await expect(page.getByRole('slider', { name: 'Where the hinge goes' })).toBeFocused();
+      await page.keyboard.press('ArrowLeft');
+      await page.keyboard.press('Shift+ArrowLeft');
+      await page.keyboard.press('Enter');
+      await expect(hinge).toBeFocused();
+      await expect(hinge).toHaveAttribute('aria-selected', 'true');
+      await page.keyboard.press('Delete');
+      await expect(hinge).toHaveCount(0);
+      await expect(beamOf(page).locator('[role=option]:focus')).toHaveCount(1);
+      await page.keyboard.press('Control+z');
+      await page.keyboard.press('Control+z');
+      await expect(options).toHaveCount(before);
+    });
+
     for (const width of WIDTHS) {
       await page.setViewportSize({ width, height: 1000 });
       await expectSound(page, `draft at ${width}`);

@@ -1,5 +1,4 @@
 import { type ReactNode, type RefObject, useEffect, useMemo, useRef, useState } from 'react';
-import { flushSync } from 'react-dom';
 import { useWidth } from '@/components/drawing/use-width';
 import { Button } from '@/components/ui/Button';
 import { ZoneHeading } from '@/components/ui/ZoneHeading';
@@ -39,16 +38,12 @@ export function DraftDrawing({ editor, letter = 'A', system = 'metric' }: DraftD
   const { template, sketch, isNow, faults } = useSketch(editor);
   const [tool, setTool] = useState<Tool | null>(null);
   const stage = useRef<HTMLDivElement>(null);
+  const follow = useFollow(stage, editor);
   const add = ({ edits, select }: Added) => {
-    const isPlaced = tool !== null;
-    // What is placed is followed by the focus; the page stays where it is.
-    if (isPlaced) stage.current?.focus({ preventScroll: true });
-    flushSync(() => {
-      setTool(null);
-      editor.edit(...edits);
-      editor.select(select);
-    });
-    if (isPlaced) focusParts(stage.current);
+    if (tool !== null) follow();
+    setTool(null);
+    editor.edit(...edits);
+    editor.select(select);
   };
   const canAdd = !editor.readOnly && (isNow || sketch === null);
   const { document } = editor;
@@ -80,6 +75,7 @@ export function DraftDrawing({ editor, letter = 'A', system = 'metric' }: DraftD
           system={system}
           tool={isNow ? tool : null}
           onAdd={add}
+          onFollow={follow}
           onLeave={() => setTool(null)}
         >
           {template && template.parameters.length > 0 && (
@@ -89,6 +85,23 @@ export function DraftDrawing({ editor, letter = 'A', system = 'metric' }: DraftD
       )}
     </>
   );
+}
+
+/**
+ * Lets the focus follow what is placed or taken away: it waits on the drawing, where the page stays, until the drawing
+ * shows the change, which is a moment after the form does, and goes to the chosen part if it is waiting still.
+ */
+function useFollow(stage: RefObject<HTMLDivElement | null>, { document }: EditorState): () => void {
+  const isWanted = useRef(false);
+  // biome-ignore lint/correctness/useExhaustiveDependencies: it runs when another document is drawn
+  useEffect(() => {
+    if (isWanted.current && stage.current?.contains(window.document.activeElement)) focusParts(stage.current);
+    isWanted.current = false;
+  }, [stage, document]);
+  return () => {
+    isWanted.current = true;
+    stage.current?.focus({ preventScroll: true });
+  };
 }
 
 /** Why a tool cannot be taken now; null where it can. */
@@ -106,13 +119,15 @@ interface BeamProps {
   readonly system: UnitSystemName;
   readonly tool: Tool | null;
   readonly onAdd: (added: Added) => void;
+  /** What comes is to be followed by the focus. */
+  readonly onFollow: () => void;
   readonly onLeave: () => void;
   /** The values that it is shown at. */
   readonly children: ReactNode;
 }
 
 /** The beam, which stays in view, and below it what is said of the chosen part and of the whole. */
-function Beam({ stage, editor, sketch, isNow, system, tool, onAdd, onLeave, children }: BeamProps) {
+function Beam({ stage, editor, sketch, isNow, system, tool, onAdd, onFollow, onLeave, children }: BeamProps) {
   const width = useWidth(stage, WIDTH);
   const drawn = useMemo(() => drawnOf(sketch), [sketch]);
   const layout = useMemo(() => layStage(drawn.beam, width), [drawn, width]);
@@ -122,8 +137,7 @@ function Beam({ stage, editor, sketch, isNow, system, tool, onAdd, onLeave, chil
   const moves = partMoves(editor, sketch, drag);
   const part = drawn.parts.find(({ pointer }) => isChosen(pointer, editor.selected));
   const remove = (gone: Part) => {
-    flushSync(() => moves.remove(gone));
-    focusParts(stage.current);
+    if (moves.remove(gone)) onFollow();
   };
   const shared = { sketch, layout, onLeave };
   return (
@@ -136,7 +150,7 @@ function Beam({ stage, editor, sketch, isNow, system, tool, onAdd, onLeave, chil
           motion={'faults' in reading ? reading.faults.find((fault) => fault.motion)?.motion : undefined}
           isLastGood={!isNow}
           onSelect={editor.select}
-          onRemove={moves.remove}
+          onRemove={remove}
           onDrag={moves.drag}
           onNudge={moves.nudge}
           onOpen={() => requestAnimationFrame(() => firstControl(bar.current)?.focus())}

@@ -37,10 +37,13 @@ export function partMoves(editor: EditorState, sketch: Sketch, drag: { current: 
     if (place && place.text !== at) editor.edit(...movedTo(document, sketch, part.pointer, 'at', place));
   };
   return {
-    remove(part: Part) {
-      if (readOnly || part.kind === 'dimension' || whyKept(document, part.pointer) !== undefined) return;
+    /** Whether it could be taken away. */
+    remove(part: Part): boolean {
+      if (readOnly || part.kind === 'dimension' || whyKept(document, part.pointer) !== undefined)
+        return false;
       editor.select(null);
       editor.edit(...removal(document, part.pointer));
+      return true;
     },
     /** A place that ends with a length changes the value shown; another is put from place to place. */
     drag(part: Part, by: number, isBegun: boolean) {

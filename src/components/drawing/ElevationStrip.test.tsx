@@ -108,6 +108,18 @@ describe('what the strip shows', () => {
     expect(has(draw(PROPPED, { symbols }), 'role="button"')).toBe(false);
   });
 
+  test.each(['screen', 'phone', 'print'] as const)('figures of short lengths at leaders, on %s', (mode) => {
+    const loads = [0.1, 0.2].map((at) => ({ kind: 'point' as const, at, p: 20_000 }));
+    const lengths = [
+      { symbol: 'a', from: 0, to: 0.1 },
+      { symbol: 'b', from: 0.1, to: 0.2 },
+    ];
+    const drawn = draw({ ...PROPPED, loads }, { mode, symbols: { lengths } });
+    expect(textsOf(drawn)).toEqual(expect.arrayContaining(['a = 0.100', 'b = 0.100']));
+    const [, leaders = ''] = /class="leader" d="([^"]*)"/.exec(drawn) ?? [];
+    expect(leaders.match(/M/g)).toHaveLength(2);
+  });
+
   test('feet and inches for a practice that uses them', () => {
     const drawn = draw(PROPPED, { format: DRAWING_FORMATS.us });
     expect(textsOf(drawn)).toContain('26&#x27;-2 15/16&quot;');

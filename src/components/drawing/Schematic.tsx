@@ -1,8 +1,8 @@
 import { useMemo } from 'react';
 import type { Piecewise } from '@/engine/polynomial/index';
 import { valueAt } from './geometry/curve';
-import { type NamedLength, packed } from './geometry/dimensions';
-import { NamedLengths } from './schematic/NamedLengths';
+import type { NamedLength } from './geometry/dimensions';
+import { lengthRows, NamedLengths, ROW } from './schematic/NamedLengths';
 import { SchematicFrame, SchematicMember, spread } from './schematic/SchematicFrame';
 import { SchematicLoads } from './schematic/SchematicLoads';
 import { type SchematicMark, SchematicMarks } from './schematic/SchematicMarks';
@@ -64,17 +64,16 @@ export function Schematic(props: SchematicProps) {
   const size = SIZES[props.size ?? 'row'];
   const { base, reach } = size;
   const width = props.width ?? size.width;
-  const rows = packed(lengths ?? []);
-  const height = size.height + Math.max(0, rows.length - 2) * 19;
-  const { toX, momentCurve, shape } = useMemo(() => {
-    const toX = spread(width, size, beam.length);
+  const toX = useMemo(() => spread(width, size, beam.length), [width, size, beam.length]);
+  const rows = lengthRows(lengths ?? [], { toX, width });
+  const height = size.height + Math.max(0, rows.length - 2) * ROW;
+  const { momentCurve, shape } = useMemo(() => {
     const at = { toX, base, side };
     return {
-      toX,
       momentCurve: moment && schematicCurve(moment, 'moment', { ...at, reach }),
       shape: deflected && schematicCurve(deflected, 'deflection', { ...at, reach: reach + 3 }),
     };
-  }, [beam.length, width, size, base, reach, side, moment, deflected]);
+  }, [toX, base, reach, side, moment, deflected]);
   const deflectedAt = (x: number) => (deflected && shape ? shape.toY(valueAt(deflected, x)) : base);
   return (
     <SchematicFrame width={width} height={height} label={props.label}>
@@ -91,7 +90,7 @@ export function Schematic(props: SchematicProps) {
         names={loadNames}
       />
       {mark && <SchematicMarks mark={mark} toX={toX} base={base} width={width} deflectedAt={deflectedAt} />}
-      <NamedLengths rows={rows} toX={toX} from={base + 32} />
+      <NamedLengths rows={rows} toX={toX} width={width} from={base + 32} />
     </SchematicFrame>
   );
 }

@@ -19,11 +19,15 @@ function partsBetween(positions: readonly number[]): DimensionPart[] {
   return positions.slice(1).map((to, i) => ({ from: positions[i] ?? 0, to }));
 }
 
-/** Puts each part in the innermost row where it meets no other. */
-export function packed<T extends DimensionPart>(parts: readonly T[]): T[][] {
+/** Puts each part in the innermost row where it meets no other: its ends, or what it covers with its letters. */
+export function packed<T extends DimensionPart>(
+  parts: readonly T[],
+  covers: (part: T) => readonly [number, number] = ({ from, to }) => [from, to],
+): T[][] {
   const rows: T[][] = [];
   for (const part of [...parts].sort((a, b) => a.to - a.from - (b.to - b.from))) {
-    const row = rows.find((taken) => taken.every(({ from, to }) => part.to <= from || part.from >= to));
+    const [from, to] = covers(part);
+    const row = rows.find((taken) => taken.map(covers).every(([left, right]) => to <= left || from >= right));
     if (row) row.push(part);
     else rows.push([part]);
   }

@@ -1,6 +1,7 @@
 import type { Beam } from '@/engine/model/index';
 import { type DrawingFormat, dimensionFigure, figure, named } from '../format';
-import { dimensionRows, type NamedLength } from '../geometry/dimensions';
+import { placeDimensionFigures } from '../geometry/dimension-figures';
+import { type DimensionPart, dimensionRows, type NamedLength } from '../geometry/dimensions';
 import { drawnDepth } from '../geometry/scale';
 import { textWidth } from '../geometry/text-width';
 import { namedSupports } from '../names';
@@ -27,7 +28,13 @@ export type Symbols = {
 /** How far a mechanism is drawn moving, px. */
 export const MECHANISM_REACH = 62;
 
-type DimensionRow = { y: number; from: number; xs: number[]; pairs: [number, number][] };
+type DimensionRow = {
+  y: number;
+  from: number;
+  xs: number[];
+  pairs: [number, number][];
+  leaders: { from: number; to: number }[];
+};
 
 export type ElevationLayout = {
   top: number;
@@ -44,6 +51,11 @@ export type ElevationLayout = {
 const FIGURE_SIZE = 13.5;
 const ROW = 28;
 const CLOUDED_ROW = 54;
+/** From a dimension's line to a figure outside it, and what a row with one is taller by. */
+const OUTSIDE = 22;
+const OUTSIDE_ROW = 24;
+/** Between a figure and the edge of the sheet. */
+const EDGE = 4;
 /** Height of what a cloud advises. */
 const ADVICE = 40;
 
@@ -56,24 +68,39 @@ function layDimensions(
 ) {
   const rows: DimensionRow[] = [];
   const figures: Figure[] = [];
+  let y = first;
   dimensionRows(beam, lengths).forEach((parts, i) => {
-    const y = first + i * pitch;
-    const xs = [...new Set(parts.flatMap(({ from, to }) => [xOf(frame, from), xOf(frame, to)]))];
+    const row = layRow(parts, y, frame, format);
+    const pairs = parts.map(({ from, to }): [number, number] => [xOf(frame, from), xOf(frame, to)]);
     rows.push({
       y,
-      from: i === 0 ? first - 28 : y - 20,
-      xs,
-      pairs: parts.map(({ from, to }) => [xOf(frame, from), xOf(frame, to)]),
+      from: y - (i === 0 ? 28 : 20),
+      xs: [...new Set(pairs.flat())],
+      pairs,
+      leaders: row.leaders,
     });
-    for (const { from, to, name } of parts) {
-      const text = named(name?.symbol, dimensionFigure(format, to - from));
-      const fits = textWidth(text, FIGURE_SIZE) + 6 <= (to - from) * frame.perMetre;
-      if (!fits && !name) continue;
-      const edits = name?.editable ? name.symbol : undefined;
-      figures.push({ x: xOf(frame, (from + to) / 2), y: y - 6, text, anchor: 'middle', edits });
-    }
+    figures.push(...row.figures);
+    y += pitch + (row.leaders.length > 0 ? OUTSIDE_ROW : 0);
   });
-  return { rows, figures, end: first + (rows.length - 1) * pitch };
+  return { rows, figures, end: y - pitch };
+}
+
+/** The figures of one row, and the leaders to those that stand outside. */
+function layRow(parts: readonly DimensionPart[], y: number, frame: Frame, format: DrawingFormat) {
+  const texts = parts.map(({ from, to, name }) => named(name?.symbol, dimensionFigure(format, to - from)));
+  const wishes = parts.map(({ from, to, name }, i) => ({
+    x1: xOf(frame, from),
+    x2: xOf(frame, to),
+    width: textWidth(texts[i]!, FIGURE_SIZE),
+    kept: name !== undefined,
+  }));
+  const places = placeDimensionFigures(wishes, { left: EDGE, right: frame.width - EDGE });
+  const figures = places.map(({ wish, x, leader }): Figure => {
+    const { name } = parts[wish]!;
+    const edits = name?.editable ? name.symbol : undefined;
+    return { x, y: leader ? y + OUTSIDE : y - 6, text: texts[wish]!, anchor: 'middle', edits };
+  });
+  return { figures, leaders: places.flatMap(({ leader }) => (leader ? [leader] : [])) };
 }
 
 /** What hangs below the member: symbols, reactions beside them, and an arrow where a support moves. */

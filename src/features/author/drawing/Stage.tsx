@@ -64,7 +64,7 @@ function Picture({ drawn: { beam }, layout, motion }: StageProps) {
       {beam.supports.map(({ letter, at }) => (
         <Bubble key={letter} x={toX(at)} y={size.base + 42} letter={letter} radius={9} />
       ))}
-      <NamedLengths rows={rows} toX={toX} from={below} />
+      <NamedLengths rows={rows} toX={toX} width={layout.width} from={below} />
     </SchematicFrame>
   );
 }
@@ -106,10 +106,8 @@ function Parts(props: StageProps) {
     event.preventDefault();
     if (act.do === 'go') goTo(act.to);
     else if (act.do === 'nudge') onNudge(part, act.steps);
-    else if (act.do === 'remove') {
-      flushSync(() => onRemove(part));
-      focusParts(event.currentTarget.closest('[role=listbox]'));
-    } else if (act.do === 'open') {
+    else if (act.do === 'remove') onRemove(part);
+    else if (act.do === 'open') {
       onSelect(part.pointer);
       onOpen();
     } else onSelect(null);

@@ -1,7 +1,7 @@
 /** Where the parts of a drawn draft lie on the sheet, px. */
-import { type NamedLength, packed } from '@/components/drawing/geometry/dimensions';
+import type { NamedLength } from '@/components/drawing/geometry/dimensions';
 import { combRows } from '@/components/drawing/geometry/stacking';
-import { ROW, rowAt } from '@/components/drawing/schematic/NamedLengths';
+import { lengthRows, ROW, rowAt } from '@/components/drawing/schematic/NamedLengths';
 import { type SchematicSize, spread } from '@/components/drawing/schematic/SchematicFrame';
 import { drawnName } from '@/features/template/names';
 import type { DrawnBeam, Part } from './parts';
@@ -49,12 +49,13 @@ export function layStage(beam: DrawnBeam, width: number): StageLayout {
   const above = Math.max(26 * LOADS, ...combs(beam).map(({ top }) => top)) + 22;
   const size = { margin, base: above, support: 0.95, wall: { thick: 13, beyond: 22 } };
   const toX = spread(width, size, beam.length);
-  const rows = packed(
+  const rows = lengthRows(
     beam.dimensions.map(({ from, to, tex }) => ({
       from: Math.min(from, to),
       to: Math.max(from, to),
       symbol: drawnName(tex),
     })),
+    { toX, width },
   );
   const below = above + LETTERS - 18;
   return {

@@ -223,6 +223,8 @@ describe('an import', () => {
     const { id } = (await desk.upload(fresh(wrong))).json;
     const checked = (await desk.check(id, [EN], { table: 'typed', name: 'Typed', reference: 'ST-92' })).json;
     expect(checked.open).toBeGreaterThan(1);
+    const headings = await desk.fix(id, { leave_out: [7, 1] });
+    expect([headings.status, headings.json.errors[0].pointer]).toEqual([422, '/leave_out/1']);
     const typed = (await desk.fix(id, { cells: [{ line: 2, column: 8, value: '1208' }], leave_out: [7] }))
       .json;
     expect([typed.open, typed.rows]).toEqual([0, 5]);
@@ -232,6 +234,19 @@ describe('an import', () => {
       label: 'Line 2, “Iy cm4”: 1208',
       findings: [{ line: 2, read: '12,08' }],
     });
+  });
+
+  test('can be read in another encoding than the one that was said first', async () => {
+    const bytes = Buffer.from(fresh(CLEAN.with(0, CLEAN[0]?.replace('OV', 'ÖV') ?? '')), 'latin1');
+    const { id, recognised } = (await desk.upload(bytes)).json;
+    expect(recognised.questions[0].kind).toBe('encoding');
+    const say = async (value: string, version: number) =>
+      (await desk.act('PUT', id, '/mapping', { answers: [{ kind: 'encoding', value }] }, version)).json;
+    const wrong = await say('windows-1251', 1);
+    expect([wrong.mapping.encoding, wrong.columns[0].samples[0]]).toEqual(['windows-1251', 'ЦV 180Ч90Ч18']);
+    expect(wrong.recognised.questions[0].kind).toBe('encoding');
+    const right = await say('windows-1252', wrong.version);
+    expect([right.open_questions, right.columns[0].samples[0]]).toEqual([['axes'], 'ÖV 180×90×18']);
   });
 
   test('is cancelled at any time before it is an edition, and never after', async () => {

@@ -7,7 +7,7 @@ import type { ImportView } from './imports';
 import { ProgressZone } from './ProgressZone';
 import { usePlace } from './place';
 import { QuestionList } from './QuestionList';
-import { firstRowLine } from './report';
+import { firstRowLine, lostWords } from './report';
 import { countWords } from './words';
 
 interface FindingZoneProps extends Omit<Deeds, 'isOff' | 'firstRow'> {
@@ -22,56 +22,75 @@ interface FindingZoneProps extends Omit<Deeds, 'isOff' | 'firstRow'> {
 
 /** First what only a person can say, then how far the check is, then what it found. */
 export function FindingZone(props: FindingZoneProps) {
-  const { view, underWay, isLost, isEditable, onFix, onAccept, onCancel } = props;
-  const { state } = view;
-  const place = usePlace();
-  const host = useRef<HTMLElement>(null);
-  /** The zone stays as long while its rows are checked again, so that nothing below it jumps. */
-  const [height, setHeight] = useState(0);
-  const keepPlace = () => {
-    place.keep();
-    setHeight(host.current?.offsetHeight ?? 0);
-  };
-  if (state === 'mapping' || state === 'failed')
+  const { view, underWay } = props;
+  if (view.state === 'mapping' || view.state === 'failed')
     return (
       <section className="zone">
         <ZoneHeading letter="B">What the file does not say</ZoneHeading>
         <Asked {...props} />
       </section>
     );
-  if (!underWay && !view.report)
-    return (
-      <section className="zone">
-        <ZoneHeading letter="B">Rows with problems</ZoneHeading>
-        <p>
-          The import was cancelled before its rows were checked. The file is kept, and nothing became of it.
-        </p>
-      </section>
-    );
+  if (underWay || view.report) return <CheckZone {...props} />;
+  return (
+    <section className="zone">
+      <ZoneHeading letter="B">Rows with problems</ZoneHeading>
+      <p>
+        The import was cancelled before its rows were checked. The file is kept, and nothing became of it.
+      </p>
+    </section>
+  );
+}
+
+function CheckZone(props: FindingZoneProps) {
+  const { view, underWay, isLost, isEditable, onFix, onAccept, onCancel } = props;
+  const place = usePlace();
+  const host = useRef<HTMLElement>(null);
+  /** The zone stays as long while its rows are checked again, so that nothing below it jumps. */
+  const [height, setHeight] = useState(0);
+  const keeping =
+    <T,>(act: (given: T) => void) =>
+    (given: T) => {
+      place.keep();
+      setHeight(host.current?.offsetHeight ?? 0);
+      act(given);
+    };
   return (
     <section ref={host} className="zone" style={underWay ? { minHeight: height } : undefined}>
       <ZoneHeading letter="B" note={underWay ? undefined : <Counts view={view} />}>
         Rows with problems
       </ZoneHeading>
       {underWay ? (
-        <ProgressZone view={view} isLost={isLost} onCancel={view.may_act ? onCancel : undefined} />
+        <ProgressZone
+          view={view}
+          isLost={isLost}
+          onCancel={view.may_act && lostWords(view) === '' ? onCancel : undefined}
+        />
       ) : (
         <FindingList
           view={view}
           firstRow={firstRowLine(view.mapping)}
-          isOff={!isEditable || state !== 'findings'}
+          isOff={!isEditable || view.state !== 'findings'}
           place={place}
-          onFix={(fixes) => {
-            keepPlace();
-            onFix(fixes);
-          }}
-          onAccept={(accept) => {
-            keepPlace();
-            onAccept(accept);
-          }}
+          onFix={keeping(onFix)}
+          onAccept={keeping(onAccept)}
         />
       )}
+      {isEditable && <SaidBefore {...props} />}
     </section>
+  );
+}
+
+/** What was asked of the file before it was checked, to be said otherwise. */
+function SaidBefore({ view: { recognised }, mapping, onAnswer }: FindingZoneProps) {
+  const questions = recognised.questions.filter(({ kind }) => kind !== 'unit');
+  if (questions.length === 0) return null;
+  return (
+    <details className="mt-14">
+      <summary className="link flex min-h-26 items-center max-md:min-h-44">What you said of the file</summary>
+      <div className="mt-8">
+        <QuestionList {...{ questions, mapping, onAnswer }} isFixed={false} />
+      </div>
+    </details>
   );
 }
 

@@ -8,7 +8,7 @@ import type { Question } from '@/features/section/import/contract';
 import { paths } from '@/paths';
 import type { Commit, Fixes, ImportView } from './imports';
 import { openWords } from './QuestionList';
-import { firstRowLine } from './report';
+import { faultyLines, lostWords } from './report';
 import { STATE_LABELS } from './words';
 
 interface ImportBlockProps {
@@ -36,14 +36,10 @@ const EMPTY = { change_note: '', change_class: '', consequence: '' };
 export function ImportBlock(props: ImportBlockProps) {
   const { practice, view } = props;
   const [said, setSaid] = useState(EMPTY);
+  const [isEnding, setEnding] = useState(false);
   const { state, table, edition, by, created_at: at } = view;
   const isReady =
     state === 'findings' && !props.hasNews && !view.unchecked && view.open === 0 && view.may_act;
-  const set = (name: keyof typeof EMPTY) => ({
-    name,
-    value: said[name],
-    onChange: ({ target }: { target: { value: string } }) => setSaid({ ...said, [name]: target.value }),
-  });
   const action = actionOf(props, isReady, said);
   const identity = {
     kind: 'Section table',
@@ -63,29 +59,44 @@ export function ImportBlock(props: ImportBlockProps) {
         by={by}
         date={DAY.format(new Date(at))}
         action={action}
-        others={othersOf(props)}
+        others={isEnding ? endingOf(props, () => setEnding(false)) : othersOf(props, () => setEnding(true))}
       >
-        {isReady && (
-          <div className="col-span-6 grid gap-10">
-            <TextField
-              {...set('change_note')}
-              label="What is new in this edition, and why"
-              rows={3}
-              maxLength={2000}
-            />
-            <div className="grid grid-cols-2 gap-10">
-              <ChoiceField
-                {...set('change_class')}
-                label="Class of change"
-                choices={choices(CHANGE_CLASSES)}
-              />
-              <ChoiceField {...set('consequence')} label="At stake" choices={choices(CONSEQUENCES)} />
-            </div>
-          </div>
+        {isEnding && !isOver(view) && (
+          <p role="status" className="col-span-6">
+            {lostWords(view)} A cancelled import does not come back; its file and the record of it stay.
+          </p>
         )}
+        {isReady && <CommitFields said={said} onSaid={setSaid} />}
       </TitleBlock>
       <TitleStrip {...identity} action={action} />
     </aside>
+  );
+}
+
+interface CommitFieldsProps {
+  readonly said: Said;
+  readonly onSaid: (said: Said) => void;
+}
+
+function CommitFields({ said, onSaid }: CommitFieldsProps) {
+  const set = (name: keyof Said) => ({
+    name,
+    value: said[name],
+    onChange: ({ target }: { target: { value: string } }) => onSaid({ ...said, [name]: target.value }),
+  });
+  return (
+    <div className="col-span-6 grid gap-10">
+      <TextField
+        {...set('change_note')}
+        label="What is new in this edition, and why"
+        rows={3}
+        maxLength={2000}
+      />
+      <div className="grid grid-cols-2 gap-10">
+        <ChoiceField {...set('change_class')} label="Class of change" choices={choices(CHANGE_CLASSES)} />
+        <ChoiceField {...set('consequence')} label="At stake" choices={choices(CONSEQUENCES)} />
+      </div>
+    </div>
   );
 }
 
@@ -139,19 +150,33 @@ function missingOf(said: Said): string | null {
 
 const openReason = (open: number): string => `${open} to clear first`;
 
+const isOver = ({ state, may_act }: ImportView): boolean =>
+  state === 'committed' || state === 'cancelled' || !may_act;
+
+/** Asked once more. What keeps it stands where the press was that asked. */
+function endingOf(props: ImportBlockProps, onKeep: () => void): readonly BlockAction[] {
+  if (isOver(props.view) || props.isBusy) return [];
+  const keep = { label: 'Go on with it', onPress: onKeep };
+  const end = { label: 'Cancel it for good', onPress: props.onCancel };
+  return hasLinesToLeave(props.view) ? [end, keep] : [keep, end];
+}
+
+const hasLinesToLeave = (view: ImportView): boolean =>
+  view.state === 'findings' && faultyLines(view).length > 0;
+
 /** Leaving out every row that has an error, and ending it. */
-function othersOf({ view, isBusy, onFix, onCancel }: ImportBlockProps): readonly BlockAction[] {
-  const { state, report } = view;
-  if (state === 'committed' || state === 'cancelled' || !view.may_act || isBusy) return [];
-  const errors = report?.groups.filter(({ severity }) => severity === 'error') ?? [];
-  const found = errors.flatMap(({ findings }) => findings.flatMap(({ line }) => line ?? []));
-  const lines = [...new Set(found)].filter((line) => line >= firstRowLine(view.mapping));
+function othersOf(
+  { view, isBusy, onFix, onCancel }: ImportBlockProps,
+  onAskEnd: () => void,
+): readonly BlockAction[] {
+  if (isOver(view) || isBusy) return [];
+  const lines = faultyLines(view);
   const leave = {
     label: lines.length === 1 ? 'Leave out 1 row' : `Leave out ${lines.length} rows`,
     onPress: () => onFix({ leave_out: lines }),
   };
   return [
-    ...(state === 'findings' && lines.length > 0 ? [leave] : []),
-    { label: 'Cancel the import', onPress: onCancel },
+    ...(hasLinesToLeave(view) ? [leave] : []),
+    { label: 'Cancel the import', onPress: lostWords(view) === '' ? onCancel : onAskEnd },
   ];
 }

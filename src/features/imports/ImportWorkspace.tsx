@@ -80,7 +80,11 @@ export function ImportWorkspace({ practice, first, tables, reference }: ImportWo
   const { id, version, state } = view;
   const isEditable = view.may_act && !underWay && !isBusy && EDITABLE.includes(state);
   const fix = (fixes: Parameters<typeof importApi.fix>[2]) => act(() => importApi.fix(id, version, fixes));
-  const cancel = () => act(() => importApi.cancel(id, version));
+  const cancel = async () => {
+    const isDone = await act(() => importApi.cancel(id, version));
+    // What was pressed is gone.
+    if (isDone) document.getElementById('title-block')?.focus();
+  };
   return (
     <>
       <ImportHead {...{ view, problem, mapping }} />

@@ -51,18 +51,20 @@ function Asked({ question, mapping, isFixed, onAnswer }: AskedProps) {
   return (
     <fieldset className="min-w-0">
       <legend className="mb-6 font-semibold">{question.message}</legend>
-      {offers.map(({ answer, words, note, isChosen }) => (
-        <Radio
-          key={words}
-          name={name}
-          checked={isChosen}
-          disabled={isFixed}
-          onChange={() => onAnswer(answer)}
-        >
-          {words}
-          {note && <span className="block text-note text-ink-2">{note}</span>}
-        </Radio>
-      ))}
+      <div className="flex flex-col items-start">
+        {offers.map(({ answer, words, note, isChosen }) => (
+          <Radio
+            key={words}
+            name={name}
+            checked={isChosen}
+            disabled={isFixed}
+            onChange={() => onAnswer(answer)}
+          >
+            {words}
+            {note && <span className="block text-note text-ink-2">{note}</span>}
+          </Radio>
+        ))}
+      </div>
     </fieldset>
   );
 }

@@ -120,10 +120,14 @@ export const saveMapping = (actor: Actor, id: string, version: number, said: Sav
     // Headings may read otherwise in another encoding, and with them everything that follows from them.
     const encoding = answers.findLast((one) => one.kind === 'encoding');
     const reread = encoding ? await recogniseAs(row, encoding.value) : null;
+    // It can still be answered otherwise.
+    const asked = row.recognised.questions.filter(({ kind }) => kind === 'encoding');
     const mapping = answers.reduce(answer, reread?.mapping ?? row.mapping);
     const next = { about, mapping, version: row.version + 1 };
     await change(tx, row, {
-      ...(reread && { recognition: { ...reread, remembered: null } }),
+      ...(reread && {
+        recognition: { ...reread, questions: [...asked, ...reread.questions], remembered: null },
+      }),
       ...next,
       state: 'mapping',
       facts: null,

@@ -103,7 +103,11 @@ test('a junior sees only what the supplier holds, and how soon', async ({ page, 
   await expect(grid.getByText('IPE 300', { exact: true })).toBeVisible();
   await expect(grid.getByText('HE 200 A', { exact: true })).toBeVisible();
   await expect(grid.getByText('IPE 270', { exact: true })).toHaveCount(0);
-  await page.reload();
+  await page.goto('/sections/european-i/IPE%20300');
+  const held = page.locator('section.zone').filter({ hasText: SUPPLIER });
+  await expect(held).toContainText('12.5, 18 m');
+  await expect(held).toContainText(/As of.*today/s);
+  await page.goBack();
   await awake(page);
   await expect(page.getByLabel('Stock', { exact: true })).toHaveValue(SLUG);
   await expect(grid.getByText('IPE 330', { exact: true })).toBeVisible();

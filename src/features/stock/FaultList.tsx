@@ -2,6 +2,7 @@ import { Button } from '@/components/ui/Button';
 import { ChoiceField, Field } from '@/components/ui/Field';
 import { counted } from '@/features/desk/words';
 import { shownName } from '@/features/section/display';
+import { groupBy } from '@/lib/group-by';
 import type { StockField } from './cells';
 import type { StockRow } from './file';
 import { PRICE_BANDS } from './stock';
@@ -35,7 +36,7 @@ export function FaultList({ loaded, tableName, onMend, onLeaveOut }: FaultListPr
     const row = before && current.get(before.line);
     return before && row ? [{ fault, before, row }] : [];
   });
-  const byLine = [...Map.groupBy(found, ({ row }) => row.line)];
+  const byLine = [...groupBy(found, ({ row }) => row.line)];
   const lines = new Set(byLine.map(([line]) => line));
   return (
     <>

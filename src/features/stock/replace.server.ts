@@ -1,4 +1,4 @@
-import { and, eq } from 'drizzle-orm';
+import { and, eq, sql } from 'drizzle-orm';
 import type { Tx } from '@/db/client';
 import { stockLine } from '@/db/schema/stock';
 import { withPractice } from '@/db/tenancy';
@@ -82,8 +82,6 @@ const toFault = ({ line, field, value, code, message }: Matched['faults'][number
   message: `Line ${line}${value === '' ? '' : `, “${value}”`}: ${message}`,
 });
 
-const AT_ONCE = 2000; // rows of nine values: a statement takes 65,535
-
 interface Changes {
   readonly added: number;
   readonly removed: number;
@@ -108,20 +106,7 @@ async function writeLines(
     .delete(stockLine)
     .where(and(eq(stockLine.practiceId, practiceId), eq(stockLine.listId, listId)))
     .returning();
-  for (let at = 0; at < lines.length; at += AT_ONCE)
-    await tx.insert(stockLine).values(
-      lines.slice(at, at + AT_ONCE).map((line) => ({
-        practiceId,
-        listId,
-        tableSlug: line.table,
-        designation: line.designation,
-        designationKey: line.key,
-        lengthsM: line.lengths_m,
-        leadTimeDays: line.lead_time_days,
-        priceBand: line.price_band,
-        note: line.note,
-      })),
-    );
+  await insertLines(tx, practiceId, listId, lines);
   return changesOf(
     new Map(
       gone.map((row) => [
@@ -137,6 +122,14 @@ async function writeLines(
     ),
   );
 }
+
+/** As one parameter: the query builder takes ten times as long over one for each cell. */
+const insertLines = (tx: Tx, practiceId: string, listId: string, lines: readonly MatchedLine[]) =>
+  tx.execute(sql`
+    insert into stock_line (practice_id, list_id, table_slug, designation, designation_key, lengths_m, lead_time_days, price_band, note)
+    select ${practiceId}::uuid, ${listId}::uuid, r."table", r.designation, r.key, r.lengths_m, r.lead_time_days, r.price_band, r.note
+    from jsonb_to_recordset(${JSON.stringify(lines)}::text::jsonb) as r ("table" text, designation text, key text,
+      lengths_m float8[], lead_time_days int, price_band text, note text)`);
 
 function changesOf(before: ReadonlyMap<string, string>, after: ReadonlyMap<string, string>): Changes {
   const kept = [...after].filter(([name]) => before.has(name));

@@ -33,6 +33,7 @@ export class Register {
   private readonly columns: Readonly<Record<SectionField, Float64Array>>;
   private readonly tables: readonly string[];
   private readonly orders = new Map<string, Uint32Array>();
+  private readonly masks = new WeakMap<ReadonlyMap<string, ReadonlySet<string>>, Uint8Array>();
 
   constructor(private readonly rows: RegisterRows) {
     const { values, editions } = rows;
@@ -63,12 +64,16 @@ export class Register {
   /** NaN where a table does not give it. */
   values = (field: SectionField): Float64Array => this.columns[field];
 
-  /** 1 for every row whose key is among those given of its table. */
+  /** 1 for every row whose key is among those given of its table; found once for the same names. */
   named(names: ReadonlyMap<string, ReadonlySet<string>>): Uint8Array {
+    const before = this.masks.get(names);
+    if (before) return before;
     const ofEdition = this.tables.map((table) => names.get(table));
-    return Uint8Array.from(this.rows.keys, (key, at) =>
-      Number(ofEdition[this.rows.editionOf[at] ?? -1]?.has(key) ?? false),
-    );
+    const mask = new Uint8Array(this.count);
+    for (const [at, key] of this.rows.keys.entries())
+      mask[at] = Number(ofEdition[this.rows.editionOf[at] ?? -1]?.has(key) ?? false);
+    this.masks.set(names, mask);
+    return mask;
   }
 
   /** 1 for every row of the table and shapes asked for that meets the ranges; a value that is not given meets none. */

@@ -114,6 +114,15 @@ test('two librarians’ changes of different rows are both kept', async ({ page,
   // 1.5 · 0.6 = 0.9 of snow and 1.5 · 0.5 = 0.75 of wind; before, 0.75 and 0.9.
   const line = used(other).getByRole('listitem').filter({ hasText: '1.35 G + 1.5 Q + 0.9 S + 0.75 W' });
   await expect(line).toContainText('was 1.35 G + 1.5 Q + 0.75 S + 0.9 W');
+
+  await isSaved(other);
+  await other.goto(`/library/combination-set/${SLUG}/revisions/2`);
+  const changed = other.getByRole('table', { name: /^Combinations that come to something else/ });
+  await expect(changed.getByRole('row', { name: /^6\.10, imposed leading 1\.35 G/ })).toContainText(
+    '1.35 G + 1.5 Q + 0.9 S + 0.75 W',
+  );
+  const parts = other.getByRole('row', { name: /Wind › ψ₀/ });
+  await expect(parts).toContainText('0.60.5');
   await context.close();
 });
 

@@ -33,6 +33,8 @@ export async function readReview(actor: Actor, key: RevisionKey, impactFrom: num
     proof,
     impact,
     base,
+    /** As its author wrote it. */
+    before: before?.document ?? null,
     changes: before ? changesBetween(before.document, draft.document) : [],
   };
 }

@@ -2,7 +2,7 @@ import { type ClipboardEvent, useState } from 'react';
 import { useReadOnly } from '@/features/author/fields';
 import { sameValue } from '@/features/author/merge';
 import { useDraft, useFaultIn, useSnapshot } from '@/features/author/use-editor';
-import { type Column, cellAt, cellEdit, cellText, cellValue } from './cells';
+import { type Column, cellAt, cellEdit, cellText, cellValue, isFigure } from './cells';
 
 interface CellProps {
   /** The row's pointer. */
@@ -55,7 +55,7 @@ export function Cell({ row, column, name, place, noteId, onPaste }: CellProps) {
   return (
     <input
       {...shared}
-      className={`input md:pointer-fine:min-h-28 md:text-schedule ${column.kind === 'text' ? '' : 'text-right'}`}
+      className={`input md:pointer-fine:min-h-28 md:text-schedule ${isFigure(column) ? 'text-right' : ''}`}
       autoComplete="off"
       spellCheck={false}
       inputMode={column.kind === 'number' ? 'decimal' : undefined}

@@ -4,7 +4,7 @@ import type { Pointer } from '@/features/author/edit';
 import { useReadOnly } from '@/features/author/fields';
 import { useDraft, useIsSelected, useSnapshot } from '@/features/author/use-editor';
 import { Cell } from './Cell';
-import { type Column, type Growth, grown, isTable, pastedRows, pasteEdits } from './cells';
+import { type Column, type Growth, grown, isFigure, isTable, pastedRows, pasteEdits } from './cells';
 import { moveInGrid } from './grid-keys';
 
 export interface GridRow {
@@ -35,20 +35,7 @@ interface GridProps {
 
 /** Entries of a set as a table of fields. */
 export function Grid({ caption, columns, heads = {}, widths, rows, more, below, lead, ...rest }: GridProps) {
-  const store = useDraft();
-  const [left, setLeft] = useState(0);
-  const paste = (row: number, column: number) => (event: ClipboardEvent<HTMLInputElement>) => {
-    const text = event.clipboardData.getData('text/plain');
-    if (!isTable(text) || store.snapshot.readOnly) return;
-    event.preventDefault();
-    const pasted = pastedRows(text);
-    const targets = rows.slice(row).map(({ at }) => at);
-    const lacking = rest.growth ? pasted.length - targets.length : 0;
-    const more = rest.growth && grown(store.document, rest.growth, lacking);
-    const filled = pasteEdits(pasted, [...targets, ...(more?.rows ?? [])], columns.slice(column));
-    store.edit(...(more?.edits ?? []), ...filled.edits);
-    setLeft(filled.left);
-  };
+  const { left, paste } = usePaste({ columns, rows, growth: rest.growth });
   return (
     <div className="md:overflow-x-auto">
       <table
@@ -67,13 +54,9 @@ export function Grid({ caption, columns, heads = {}, widths, rows, more, below, 
         <thead>
           <tr>
             {lead && <th scope="col">{lead.head}</th>}
-            {columns.map(({ key, label, kind }) => (
-              <th
-                key={key}
-                scope="col"
-                className={kind === 'text' || kind === 'choice' ? undefined : 'figure'}
-              >
-                {heads[key] ?? label}
+            {columns.map((column) => (
+              <th key={column.key} scope="col" className={isFigure(column) ? 'figure' : undefined}>
+                {heads[column.key] ?? column.label}
               </th>
             ))}
             {more && (
@@ -96,6 +79,28 @@ export function Grid({ caption, columns, heads = {}, widths, rows, more, below, 
   );
 }
 
+/** Fills the table with a pasted block, as one step of undo; `left` counts the lines that had no row. */
+function usePaste({
+  columns,
+  rows,
+  growth,
+}: Pick<GridProps, 'columns' | 'rows'> & { growth: Growth | undefined }) {
+  const store = useDraft();
+  const [left, setLeft] = useState(0);
+  const paste = (row: number, column: number) => (event: ClipboardEvent<HTMLInputElement>) => {
+    const text = event.clipboardData.getData('text/plain');
+    if (!isTable(text) || store.snapshot.readOnly) return;
+    event.preventDefault();
+    const pasted = pastedRows(text);
+    const there = rows.slice(row).map(({ at }) => at);
+    const added = growth && grown(store.document, growth, pasted.length - there.length);
+    const filled = pasteEdits(pasted, [...there, ...(added?.rows ?? [])], columns.slice(column));
+    store.edit(...(added?.edits ?? []), ...filled.edits);
+    setLeft(filled.left);
+  };
+  return { left, paste };
+}
+
 interface RowProps extends Pick<GridProps, 'columns'> {
   readonly more: GridProps['more'] | undefined;
   readonly below: GridProps['below'] | undefined;
@@ -116,7 +121,7 @@ function Row({ row, index, columns, more, below, lead, paste }: RowProps) {
       <tr data-chosen={isOpen || undefined}>
         {lead && <th scope="row">{lead.of(row)}</th>}
         {columns.map((column, place) => (
-          <td key={column.key} data-label={column.label} className="align-top! ">
+          <td key={column.key} data-label={column.label} className="align-top!">
             <div className="min-w-0 max-md:w-200 max-md:flex-none">
               <Cell
                 row={row.at}

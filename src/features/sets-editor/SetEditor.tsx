@@ -12,6 +12,7 @@ import { DraftContext } from '@/features/author/use-editor';
 import { partName } from '@/features/desk/part-name';
 import { capital } from '@/features/desk/words';
 import { SET_READERS, type SetKind } from '@/features/review/read-set';
+import { paths } from '@/paths';
 import { type IssuedSet, referredFaults } from './criteria';
 import type { ZoneProps } from './page';
 import { UnknownFields } from './UnknownFields';
@@ -72,6 +73,11 @@ export function SetEditor({ data }: ZoneProps) {
                 <FaultZone none="None. It can be sent to review." />
                 <UnknownFields />
                 <UndoButtons />
+                <p className="mt-10">
+                  <a className="link" href={paths.helpPage('sets')}>
+                    How a set is written
+                  </a>
+                </p>
               </section>
               {side.map(([title, Fields], index) => (
                 <section key={title} className="zone border-t border-ink">

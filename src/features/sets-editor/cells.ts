@@ -25,6 +25,9 @@ export type Column = {
   | { readonly kind: 'si'; readonly dimension: DimensionName; readonly unit: string }
 );
 
+/** Whether a column is of numbers, which stand at the right. */
+export const isFigure = ({ kind }: Column): boolean => kind !== 'text' && kind !== 'choice';
+
 /** Of a length in SI that was typed in another unit: more digits than anybody types, fewer than a double has. */
 const DIGITS = 12;
 

@@ -1,10 +1,10 @@
 import { type ReactNode, useState } from 'react';
 import { RichHtml } from '@/components/drawing/marks/RichHtml';
 import { Button } from '@/components/ui/Button';
-import { cleared, MEASURES, USUAL_BOUNDS, withRequired } from './address';
+import { cleared, USUAL_BOUNDS, withRequired } from './address';
 import { axesOf, FIELD_WORDS, symbolOf } from './display';
 import { NumberBound } from './NumberBound';
-import { SECTION_MEASURES, type SectionMeasure } from './query';
+import { MEASURES, SECTION_MEASURES, type SectionMeasure } from './query';
 import { focusOnLine, type RequirementsProps } from './RequiredLines';
 
 const WORDS = { w_pl_min: 'Plastic modulus', i_major_min: 'Second moment', width_max: 'Width' } as const;

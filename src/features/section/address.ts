@@ -1,5 +1,6 @@
 import { z } from 'zod';
 import {
+  MEASURES,
   SECTION_MEASURES,
   type SectionMeasure,
   type SectionQuery,
@@ -43,8 +44,6 @@ export const EMPTY: PageState = {
 };
 export const MOST_PINS = 4;
 
-export const MEASURES = Object.keys(SECTION_MEASURES) as SectionMeasure[];
-
 /** Bounds that have a field of their own: of depth and mass either end, of these one. */
 export const USUAL_BOUNDS = ['w_pl_min', 'i_major_min', 'width_max'] as const satisfies readonly Bound[];
 const WITH_FIELD: readonly string[] = ['depth_min', 'depth_max', 'mass_min', 'mass_max', ...USUAL_BOUNDS];
@@ -55,11 +54,13 @@ export const keyOf = ({ table, designation }: Pick<SectionItem, 'table' | 'desig
 const endsOf = (measure: SectionMeasure) => [`${measure}_min`, `${measure}_max`] as const;
 const BOUNDS: readonly Bound[] = MEASURES.flatMap(endsOf);
 
+const isMeasure = (name: string): name is SectionMeasure => Object.hasOwn(SECTION_MEASURES, name);
+
 /** Measures by their names, each once and in their order; what is none is left out. */
-export const readColumns = (names: readonly string[]): readonly SectionMeasure[] | null => {
-  const known = new Set(names.filter((name) => MEASURES.includes(name as SectionMeasure)));
-  return known.size === 0 ? null : ([...known] as SectionMeasure[]);
-};
+export function readColumns(names: readonly string[]): readonly SectionMeasure[] | null {
+  const known = [...new Set(names)].filter(isMeasure);
+  return known.length === 0 ? null : known;
+}
 
 /** What an address asks for; a part of it that cannot be read asks for nothing. */
 export function readAddress(search: string): PageState {

@@ -1,12 +1,10 @@
 import { z } from 'zod';
-import { SECTION_MEASURES, type SectionMeasure } from './query';
-
-const measure = z.enum(Object.keys(SECTION_MEASURES) as [SectionMeasure, ...SectionMeasure[]]);
+import { MEASURES } from './query';
 
 /** The measures that a person's schedules of sections show, in their order; null: the usual ones. */
 export const ColumnChoice = z.strictObject({
   columns: z
-    .array(measure)
+    .array(z.enum(MEASURES))
     .min(1)
     .refine((columns) => new Set(columns).size === columns.length, 'Name each measure once.')
     .readonly()

@@ -51,7 +51,7 @@ export function measureOf(item: Measured, field: SectionField): number | null {
   }
 }
 
-const MEASURES = Object.keys(SECTION_MEASURES) as SectionMeasure[];
+export const MEASURES = Object.keys(SECTION_MEASURES) as SectionMeasure[];
 
 /** Shapes as people name them, in groups where they do. */
 const SHAPE_NAMES: Readonly<Record<string, readonly SectionShape[]>> = {

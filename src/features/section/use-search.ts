@@ -1,7 +1,7 @@
 import { useMemo, useRef, useState } from 'react';
 import type { UnitSystemName } from '@/engine/quantity';
 import { type NamedAction, namedActions } from './actions';
-import { keyOf, MOST_PINS, type PageState, withPin } from './address';
+import { askedOf, keyOf, MOST_PINS, type PageState, withPin } from './address';
 import { type Answer, isNearest } from './answer';
 import { nudged } from './RangeFilter';
 import type { SectionItem } from './section';
@@ -25,7 +25,7 @@ export function useSearch(
   const act = (action: NamedAction | undefined) => {
     if (!action || !chosen) return;
     setChosenKey(keyOf(chosen));
-    opensAtChosen.current = action.opensAtIt;
+    opensAtChosen.current = action.opensAtIt && askedOf(action.state) !== askedOf(state);
     setSaid('');
     setState(() => action.state);
   };

@@ -66,7 +66,9 @@ function watchTitleBlock() {
 
 /** A form that comes back has the focus where it is wrong; one that was taken, on what it says; a page read again, on its block. */
 function startWhereItMatters() {
-  const wrong = document.querySelector<HTMLElement>('form[method="post"] [aria-invalid="true"]');
+  const wrong = document.querySelector<HTMLElement>(
+    'form:is([method="post"], [data-judged]) [aria-invalid="true"]',
+  );
   const said = document.querySelector('[data-said]')?.closest<HTMLElement>('[data-zone]');
   (takeLanding() ?? wrong ?? said)?.focus();
 }

@@ -33,7 +33,7 @@ const fieldsOf = (fields: Readonly<Record<string, string>>) => (name: string) =>
 
 async function made(name: string, count: string) {
   const { values } = await beamOf(librarian, 'ipe 300');
-  const built = build('side', fieldsOf({ count, gap: '10' }), values.dimensions, 'metric');
+  const built = build('side', fieldsOf({ count, gap: '10' }), values, 'metric');
   if (!built.ok) throw new Error('not built');
   return builtRow(name, built.dimensions, 7850);
 }

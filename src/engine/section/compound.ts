@@ -1,15 +1,22 @@
 import {
   governingThickness,
   type OutlineDimensions,
+  type OutlinePart,
   type SectionDimensions,
   type ValuesDimensions,
   widthOf,
 } from './dimensions';
+import { areaMoments } from './green';
 import { outlineCorners } from './outline';
 import { sectionProperties } from './properties';
 
-/** A section whose left edge and bottom stand at z and y, m. */
-export type Placed = { of: Exclude<SectionDimensions, ValuesDimensions>; z: number; y: number };
+/** A section whose left edge and bottom stand at z and y, m, and what it is called. */
+export type Placed = {
+  name: string;
+  of: Exclude<SectionDimensions, ValuesDimensions>;
+  z: number;
+  y: number;
+};
 
 /**
  * Sections that act as one: beams side by side, a plate on a flange. Their parts are taken to be joined for the shear
@@ -24,6 +31,7 @@ export function compound(parts: readonly Placed[]): OutlineDimensions {
         ring.map((corner) => ({ z: corner.z + z, y: corner.y + y, r: corner.r })),
       ),
     ),
+    parts: parts.map(({ name, of }) => ({ name, rings: outlineCorners(of).length })),
     t: Math.max(...parts.map(({ of }) => governingThickness(of))),
     j: own.reduce((sum, { j }) => sum + j, 0),
     iw: own.reduce((sum, { iw }) => sum + iw, 0),
@@ -31,8 +39,47 @@ export function compound(parts: readonly Placed[]): OutlineDimensions {
 }
 
 /** So many equal sections side by side, `gap` apart. */
-export const sideBySide = (of: Placed['of'], count: number, gap: number): OutlineDimensions =>
-  compound(Array.from({ length: count }, (_, k) => ({ of, z: k * (widthOf(of) + gap), y: 0 })));
+export const sideBySide = (
+  { name, of }: Pick<Placed, 'name' | 'of'>,
+  count: number,
+  gap: number,
+): OutlineDimensions =>
+  compound(Array.from({ length: count }, (_, k) => ({ name, of, z: k * (widthOf(of) + gap), y: 0 })));
+
+/** A part of a section about the axis that it has in common with the others. SI: m², m, m⁴. */
+export type Contribution = {
+  name: string;
+  area: number;
+  /** Its centroid from the left edge and from the bottom. */
+  z: number;
+  y: number;
+  /** How far its centroid lies above that of the whole. */
+  offset: number;
+  /** About the horizontal axis through its own centroid. */
+  own: number;
+  /** A·offset², by the parallel-axis theorem: I = Σ(own + shifted). */
+  shifted: number;
+};
+
+/** What every part of an outline adds to I about the major axis: the parts it was put together from, else its rings. */
+export function contributionsOf(d: OutlineDimensions): Contribution[] {
+  const rings = outlineCorners(d);
+  const { centroidUp } = sectionProperties(d);
+  let first = 0;
+  return partsOfOutline(d).map(({ name, rings: count }) => {
+    const sums = areaMoments(rings.slice(first, first + count));
+    first += count;
+    const [area, y] = [sums.area, sums.y / sums.area];
+    const offset = y - centroidUp;
+    const own = sums.yy - area * y ** 2;
+    return { name, area, z: sums.z / area, y, offset, own, shifted: area * offset ** 2 };
+  });
+}
+
+function partsOfOutline({ parts, rings }: OutlineDimensions): readonly OutlinePart[] {
+  if (parts) return parts;
+  return rings.map((ring) => ({ name: areaMoments([ring]).area < 0 ? 'Hole' : 'Outline', rings: 1 }));
+}
 
 /**
  * A solid bar of any outline, a polygon of three corners or more: J ≈ A⁴/(40 I_p) with I_p the polar second moment

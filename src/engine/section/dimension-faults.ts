@@ -83,6 +83,8 @@ function outlineFaults(d: OutlineDimensions): DimensionFault[] {
     if (!(d[dimension] >= 0)) faults.push({ dimension, message: `${dimension} must not be negative` });
   if (d.rings.length === 0 || d.rings.some((ring) => ring.length < 3))
     return [...faults, { dimension: 'rings', message: 'a ring needs three corners or more' }];
+  if (d.parts && d.parts.reduce((sum, part) => sum + part.rings, 0) !== d.rings.length)
+    return [...faults, { dimension: 'parts', message: 'every ring must be of one part' }];
   if (!d.rings.flat().every(({ z, y, r }) => Number.isFinite(z) && Number.isFinite(y) && r >= 0))
     return [
       ...faults,

@@ -59,10 +59,13 @@ export type Corner = { z: number; y: number; r: number };
 export type OutlineDimensions = {
   shape: 'outline';
   rings: readonly (readonly Corner[])[];
+  /** What it was put together from, each with how many of the rings are its own, in their order. */
+  parts?: readonly OutlinePart[] | undefined;
   t: number;
   j: number;
   iw: number;
 };
+export type OutlinePart = { name: string; rings: number };
 /** Known by its values alone: sizes over all, properties as supplied, and the area that V is divided by for τ. */
 export type ValuesDimensions = {
   shape: 'values';

@@ -1,4 +1,11 @@
-export { compound, type Placed, sideBySide, solidOutline } from './compound';
+export {
+  type Contribution,
+  compound,
+  contributionsOf,
+  type Placed,
+  sideBySide,
+  solidOutline,
+} from './compound';
 export {
   asciiDesignation,
   type DesignationParts,
@@ -17,6 +24,7 @@ export {
   type IDimensions,
   MEASURED_SHAPES,
   type MeasuredShape,
+  type OutlineDimensions,
   SECTION_SHAPES,
   type SectionDimensions,
   type SectionShape,

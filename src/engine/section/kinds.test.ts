@@ -4,6 +4,7 @@ import { areaMoments } from './green';
 import {
   type Corner,
   compound,
+  contributionsOf,
   depthOf,
   dimensionFaults,
   ImpossibleSection,
@@ -123,7 +124,7 @@ describe('compound sections', () => {
   const one = sectionProperties(beam);
 
   test('two beams side by side have twice the area, moment and moduli', () => {
-    const two = sectionProperties(sideBySide(beam, 2, 0.01));
+    const two = sectionProperties(sideBySide({ name: 'Beam', of: beam }, 2, 0.01));
     for (const name of ['area', 'iMajor', 'wElMajor', 'wPlMajor', 'j', 'iw', 'firstMoment'] as const)
       near(two[name], 2 * one[name], 1e-6);
     near(two.iMinor, 2 * (one.iMinor + one.area * 0.08 ** 2)); // parallel axes, 80 mm from the middle
@@ -133,9 +134,9 @@ describe('compound sections', () => {
     const plate: SectionDimensions & { shape: 'rectangle' } = { shape: 'rectangle', h: 0.012, b: 0.13 };
     const found = sectionProperties(
       compound([
-        { of: plate, z: 0.01, y: 0 },
-        { of: beam, z: 0, y: 0.012 },
-        { of: plate, z: 0.01, y: 0.312 },
+        { name: 'Plate', of: plate, z: 0.01, y: 0 },
+        { name: 'Beam', of: beam, z: 0, y: 0.012 },
+        { name: 'Plate', of: plate, z: 0.01, y: 0.312 },
       ]),
     );
     const area = plate.b * plate.h;
@@ -144,8 +145,8 @@ describe('compound sections', () => {
     expect(
       depthOf(
         compound([
-          { of: plate, z: 0, y: 0 },
-          { of: beam, z: 0, y: 0.012 },
+          { name: 'Plate', of: plate, z: 0, y: 0 },
+          { name: 'Beam', of: beam, z: 0, y: 0.012 },
         ]),
       ),
     ).toBeCloseTo(0.312, 12);
@@ -155,8 +156,8 @@ describe('compound sections', () => {
     const plate: SectionDimensions & { shape: 'rectangle' } = { shape: 'rectangle', h: 0.01, b: 0.15 };
     const found = sectionProperties(
       compound([
-        { of: plate, z: 0, y: 0 },
-        { of: beam, z: 0, y: 0.01 },
+        { name: 'Plate', of: plate, z: 0, y: 0 },
+        { name: 'Beam', of: beam, z: 0, y: 0.01 },
       ]),
     );
     const area = plate.b * plate.h;
@@ -167,6 +168,36 @@ describe('compound sections', () => {
       one.iMajor + one.area * (0.16 - axis) ** 2 + (plate.b * plate.h ** 3) / 12 + area * (axis - 0.005) ** 2,
     );
     near(found.wElMajor, found.iMajor / (0.31 - axis));
+  });
+
+  test('the parts say what each adds to I, and add up to it', () => {
+    const plate: SectionDimensions & { shape: 'rectangle' } = { shape: 'rectangle', h: 0.01, b: 0.15 };
+    const made = compound([
+      { name: 'Plate', of: plate, z: 0, y: 0 },
+      { name: 'Beam', of: beam, z: 0, y: 0.01 },
+    ]);
+    const found = sectionProperties(made);
+    const [under, above, ...others] = contributionsOf(made);
+    expect(others).toEqual([]);
+    expect([under?.name, above?.name]).toEqual(['Plate', 'Beam']);
+    near(under?.own ?? 0, (plate.b * plate.h ** 3) / 12);
+    near(under?.offset ?? 0, 0.005 - found.centroidUp);
+    near(above?.own ?? 0, one.iMajor);
+    near(above?.shifted ?? 0, one.area * (0.16 - found.centroidUp) ** 2);
+    near(
+      [under, above].reduce((sum, part) => sum + (part?.own ?? 0) + (part?.shifted ?? 0), 0),
+      found.iMajor,
+    );
+  });
+
+  test('an outline with a hole that was drawn has its rings for parts, the hole with a negative area', () => {
+    const square = (from: number, to: number) => polygon([from, from], [to, from], [to, to], [from, to]);
+    const hole = square(0.02, 0.06).reverse();
+    const drawn = { shape: 'outline', rings: [square(0, 0.1), hole], t: 0.01, j: 0, iw: 0 } as const;
+    const [outer, inner] = contributionsOf(drawn);
+    near(outer?.own ?? 0, 0.1 ** 4 / 12);
+    near(inner?.area ?? 0, -(0.04 ** 2));
+    expect([outer?.name, inner?.name]).toEqual(['Outline', 'Hole']);
   });
 });
 

@@ -18,6 +18,8 @@ export interface BuildView {
   readonly caution: string;
   /** What was typed, to be sent again with the wish to keep it. */
   readonly fields: readonly (readonly [string, string])[];
+  /** What was typed for another way to make it, kept while this one is looked at. */
+  readonly others: readonly (readonly [string, string])[];
 }
 
 const FIELDS: Readonly<Record<Build, readonly string[]>> = {
@@ -40,10 +42,12 @@ const FIELDS: Readonly<Record<Build, readonly string[]>> = {
   ],
 };
 
+const OTHERS = [...new Set(Object.values(FIELDS).flat())];
+
 const CAUTIONS: Readonly<Record<Build, string>> = {
-  side: 'The beams share a load only as far as they are joined; J and I_w are the sums of their own.',
+  side: 'The beams share a load only as far as they are joined; J and I_{w} are the sums of their own.',
   plated:
-    'The plates act with the beam only where welds or bolts carry the shear between them: check them. J and I_w are the sums of the parts’ own, a lower bound.',
+    'The plates act with the beam only where welds or bolts carry the shear between them: check them. J and I_{w} are the sums of the parts’ own, a lower bound.',
   outline:
     'Exact for the outline as drawn. The estimate of J holds for compact solid outlines, a square within 7 %; not for thin walls.',
   values: 'Nothing is checked against an outline: the values are as good as their source.',
@@ -51,18 +55,25 @@ const CAUTIONS: Readonly<Record<Build, string>> = {
 
 /** What the form describes: the section, or what is wrong with it. */
 export async function readBuild(user: User, typed: Typed): Promise<BuildView> {
-  const asked = typed('build');
+  // Another way to make it is asked for by a button beside the form, which sends what is typed with it.
+  const asked = typed('as') || typed('build');
   const kind: Build = isBuild(asked) ? asked : 'side';
   const name = typed('designation').trim();
   const view = {
     kind,
     name,
     caution: CAUTIONS[kind],
-    fields: ['build', 'designation', ...FIELDS[kind], 'density'].map((one) => [one, typed(one)] as const),
+    fields: [
+      ['build', kind] as const,
+      ...['designation', ...FIELDS[kind], 'density'].map((one) => [one, typed(one)] as const),
+    ],
+    others: OTHERS.filter((one) => !FIELDS[kind].includes(one) && typed(one) !== '').map(
+      (one) => [one, typed(one)] as const,
+    ),
   };
   const beam = await readBeam(user, kind, typed('beam').trim());
   const { density, faults: ofDensity } = readDensity(typed, user.unitSystem);
-  const built = build(kind, typed, beam.dimensions, user.unitSystem);
+  const built = build(kind, typed, beam.values, user.unitSystem);
   const ofName: Fault[] =
     name === '' ? [{ pointer: '/designation', code: 'empty', message: 'Give it a name.' }] : [];
   const ofBuild = built.ok ? [] : built.faults;
@@ -75,13 +86,13 @@ export async function readBuild(user: User, typed: Typed): Promise<BuildView> {
 }
 
 async function readBeam(user: User, kind: Build, designation: string) {
-  if (!ofBeam(kind) || designation === '') return { dimensions: null, faults: [] };
+  if (!ofBeam(kind) || designation === '') return { values: null, faults: [] };
   try {
     const { values } = await beamOf(user, designation);
-    return { dimensions: values.dimensions, faults: [] };
+    return { values, faults: [] };
   } catch (error) {
     if (!(error instanceof AppError) || error.faults.length === 0) throw error;
-    return { dimensions: null, faults: error.faults };
+    return { values: null, faults: error.faults };
   }
 }
 

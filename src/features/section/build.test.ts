@@ -1,11 +1,12 @@
 import { expect, test } from 'vitest';
 import { type SectionDimensions, sectionProperties } from '@/engine/section';
 import { type Build, build, builtRow, readDensity } from './build';
+import { sectionRowSchema } from './section';
 
 const BEAM: SectionDimensions = { shape: 'i', h: 0.3, b: 0.15, tw: 0.0071, tf: 0.0107, r: 0.015 };
 const typed = (fields: Readonly<Record<string, string>>) => (name: string) => fields[name] ?? '';
 const made = (kind: Build, fields: Readonly<Record<string, string>>, beam: SectionDimensions | null = BEAM) =>
-  build(kind, typed(fields), beam, 'metric');
+  build(kind, typed(fields), beam && { designation: 'IPE 300', dimensions: beam }, 'metric');
 const dimensionsOf = (built: ReturnType<typeof build>): SectionDimensions => {
   if (!built.ok) throw new Error(built.faults.map(({ message }) => message).join('\n'));
   return built.dimensions;
@@ -28,6 +29,17 @@ test('a plate under the beam adds to its depth, in the units that are typed', ()
   );
   expect(row.depth_mm).toBeCloseTo(312, 9);
   expect(row.area_cm2).toBeCloseTo(1e4 * sectionProperties(BEAM).area + 24, 9);
+});
+
+test('what is put together keeps its parts by their names, through its row', () => {
+  const built = dimensionsOf(made('plated', { top_width: '200', top_thickness: '12' }));
+  const { dimensions } = sectionRowSchema.parse(builtRow('IPE 300 + 200x12', built, 7850));
+  expect(dimensions).toMatchObject({
+    parts: [
+      { name: 'IPE 300', rings: 1 },
+      { name: 'Plate on top', rings: 1 },
+    ],
+  });
 });
 
 test('corners are read either way round, with holes, in inches in a US practice', () => {

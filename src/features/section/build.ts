@@ -83,16 +83,17 @@ class Form {
   }
 }
 
+/** The section of a table that a made one starts from. */
+export interface Beam {
+  readonly designation: string;
+  readonly dimensions: SectionDimensions;
+}
+
 /**
  * The section that the form describes. `beam` is the section of a table that it starts from, where it does. Lengths
  * without a unit are in mm, or in inches.
  */
-export function build(
-  kind: Build,
-  typed: Typed,
-  beam: SectionDimensions | null,
-  system: UnitSystemName,
-): Built {
+export function build(kind: Build, typed: Typed, beam: Beam | null, system: UnitSystemName): Built {
   const form = new Form(typed, system);
   const made = MAKERS[kind](form, beam);
   if (form.faults.length > 0 || made === null) return { ok: false, faults: form.faults };
@@ -104,7 +105,7 @@ export function build(
   return faults.length > 0 ? { ok: false, faults } : { ok: true, dimensions: made };
 }
 
-type Maker = (form: Form, beam: SectionDimensions | null) => SectionDimensions | null;
+type Maker = (form: Form, beam: Beam | null) => SectionDimensions | null;
 
 const MAKERS: Readonly<Record<Build, Maker>> = {
   side: makeSideBySide,
@@ -113,17 +114,18 @@ const MAKERS: Readonly<Record<Build, Maker>> = {
   values: makeOfValues,
 };
 
-function placeable(form: Form, beam: SectionDimensions | null): Placed['of'] | null {
+function placeable(form: Form, beam: Beam | null): Pick<Placed, 'name' | 'of'> | null {
   if (beam === null) {
     form.refuse('beam', 'Name the beam as its table does: IPE 300, W12x26.', 'empty');
     return null;
   }
-  if (beam.shape !== 'values') return beam;
+  const { designation, dimensions } = beam;
+  if (dimensions.shape !== 'values') return { name: designation, of: dimensions };
   form.refuse('beam', 'Only the values of this section are known, not its outline. Choose another.');
   return null;
 }
 
-function makeSideBySide(form: Form, given: SectionDimensions | null) {
+function makeSideBySide(form: Form, given: Beam | null) {
   const beam = placeable(form, given);
   const count = Number(form.text('count') || '2');
   const gap = form.quantity('gap', 'length', '0 or more', 0);
@@ -133,7 +135,7 @@ function makeSideBySide(form: Form, given: SectionDimensions | null) {
 }
 
 /** A plate below, a plate above, or both, each in the middle of the beam. */
-function makePlated(form: Form, given: SectionDimensions | null) {
+function makePlated(form: Form, given: Beam | null) {
   const beam = placeable(form, given);
   const plates = (['top', 'bottom'] as const).map((side) => {
     const [b, t] = [`${side}_width`, `${side}_thickness`] as const;
@@ -144,12 +146,17 @@ function makePlated(form: Form, given: SectionDimensions | null) {
   if (!top && !bottom)
     form.refuse('top_width', 'Give the width and the thickness of at least one plate.', 'empty');
   if (beam === null || form.faults.length > 0) return null;
-  const [under, width] = [bottom?.h ?? 0, widthOf(beam)];
-  const middle = (b: number) => (width - b) / 2;
+  const [under, width] = [bottom?.h ?? 0, widthOf(beam.of)];
+  const plate = (of: { shape: 'rectangle'; b: number; h: number }, name: string, y: number): Placed => ({
+    name,
+    of,
+    z: (width - of.b) / 2,
+    y,
+  });
   return compound([
-    ...(bottom ? [{ of: bottom, z: middle(bottom.b), y: 0 }] : []),
-    { of: beam, z: 0, y: under },
-    ...(top ? [{ of: top, z: middle(top.b), y: under + depthOf(beam) }] : []),
+    ...(bottom ? [plate(bottom, 'Plate below', 0)] : []),
+    { ...beam, z: 0, y: under },
+    ...(top ? [plate(top, 'Plate on top', under + depthOf(beam.of))] : []),
   ]);
 }
 

@@ -44,8 +44,13 @@ const ORDER: readonly SectionField[] = [
 const ALWAYS_COMPUTED: readonly SectionField[] = ['r_major_cm', 'r_minor_cm'];
 const IN_TABLE: Readonly<Partial<Record<SectionField, string>>> = { tw_mm: 'tw', tf_mm: 'tf', r_mm: 'r' };
 
+/** Of an outline the sizes over all are found from its corners. */
+const OF_OUTLINE: readonly SectionField[] = ['depth_mm', 'width_mm'];
+
 const isComputed = (item: SectionItem, field: SectionField): boolean =>
-  ALWAYS_COMPUTED.includes(field) || item.computed.includes(IN_TABLE[field] ?? field);
+  ALWAYS_COMPUTED.includes(field) ||
+  (item.shape === 'outline' && OF_OUTLINE.includes(field)) ||
+  item.computed.includes(IN_TABLE[field] ?? field);
 
 /** What the table says of a section; what it has no value for is left out. */
 export function tabulatedLines(item: SectionItem, axes: AxisLetters): PropertyLine[] {

@@ -26,6 +26,10 @@ const sectionDimensionsSchema = z.discriminatedUnion('shape', [
   z.strictObject({
     shape: z.literal('outline'),
     rings: z.array(ring.readonly()).min(1).max(MAX_RINGS).readonly(),
+    parts: z
+      .array(z.strictObject({ name: z.string().min(1).max(100), rings: z.int().positive() }))
+      .readonly()
+      .optional(),
     t: length,
     j: radius,
     iw: radius,

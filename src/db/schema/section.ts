@@ -3,7 +3,6 @@ import {
   check,
   doublePrecision,
   foreignKey,
-  index,
   jsonb,
   pgTable,
   primaryKey,
@@ -16,8 +15,8 @@ import { revision } from './library';
 import { id, oneOf, practiceId, tenantPolicy } from './tenant';
 
 /**
- * A row of one edition of a section table. Written while the edition is a draft, frozen with it. No trigram index: its
- * operators are not leakproof, so that under row-level security the planner never uses it.
+ * A row of one edition of a section table. Written while the edition is a draft, frozen with it. Searches do not come here:
+ * features/section/register holds the issued editions in memory.
  */
 export const section = pgTable(
   'section',
@@ -29,7 +28,7 @@ export const section = pgTable(
     designation: text().notNull(),
     /** The designation as it is searched for: one spelling for however it is typed. */
     designationKey: text().notNull(),
-    /** Its letters and its sizes, by which designations are sorted: kept, since a pattern for every row is dear. */
+    /** Its letters and its sizes, by which designations are sorted. */
     family: text().generatedAlwaysAs(sql`substring(designation_key from '^[a-z]*')`),
     sizes: doublePrecision()
       .array()
@@ -60,11 +59,6 @@ export const section = pgTable(
       foreignColumns: [revision.practiceId, revision.id],
     }),
     uniqueIndex('section_designation').on(table.practiceId, table.revisionId, table.designationKey),
-    // Of every edition: pages are read in their order, and counted from them alone.
-    index('section_by_depth').on(table.practiceId, table.depthMm, table.massKgM, table.revisionId),
-    index('section_by_mass').on(table.practiceId, table.massKgM, table.depthMm, table.revisionId),
-    // What stands next in a series by its mass.
-    index('section_by_series').on(table.practiceId, table.revisionId, table.family, table.massKgM),
     check('section_shape', oneOf(table.shape, SECTION_SHAPES)),
     tenantPolicy('section'),
   ],

@@ -30,6 +30,8 @@ interface Turn {
   readonly check: RowCheck;
   /** Rows that are kept. */
   done: number;
+  /** The next batch, which is read while the one before is kept. */
+  ahead: Promise<Batch>;
 }
 
 export function runImport(task: RunTask, attempt: Attempt): Promise<void> {
@@ -42,8 +44,9 @@ export function runImport(task: RunTask, attempt: Attempt): Promise<void> {
       chunk: async () => {
         turn ??= await begin(practiceId, runId);
         if (!turn) return 'over';
-        const batch = await nextBatch(turn);
+        const batch = await turn.ahead;
         const { row, done } = turn;
+        if (!batch.isLast) turn.ahead = readAhead(turn, batch.rowsDone);
         const kept = await withPractice(worker, async (tx) => {
           const now = await holdFree(tx, practiceId, runId);
           if (!now || now.state !== row.state || now.version !== row.version || now.done !== done)
@@ -74,8 +77,10 @@ async function begin(practiceId: string, id: string): Promise<Turn | null> {
     row = await read();
   }
   if ((row.state !== 'checking' && row.state !== 'committing') || row.facts === null) return null;
-  const check = new RowCheck(row.mapping, row.edits, row.facts, { fromRow: row.done });
-  return { row, pieces: await open(row), check, done: row.done };
+  const isSettled = row.state === 'committing';
+  const check = new RowCheck(row.mapping, row.edits, row.facts, { fromRow: row.done, isSettled });
+  const reading = { row, pieces: await open(row), check };
+  return { ...reading, done: row.done, ahead: readAhead(reading, row.done) };
 }
 
 async function open({ fileKey, id }: ImportRow): Promise<AsyncIterator<Uint8Array>> {
@@ -142,17 +147,26 @@ interface Batch extends CheckBatch {
   readonly isLast: boolean;
 }
 
-async function nextBatch({ pieces, check, done }: Turn): Promise<Batch> {
+type Reading = Pick<Turn, 'pieces' | 'check'>;
+
+/** Whoever waits for the batch hears of a fault in it; nobody may, where the turn ends before. */
+function readAhead(reading: Reading, from: number): Promise<Batch> {
+  const batch = nextBatch(reading, from);
+  batch.catch(() => undefined);
+  return batch;
+}
+
+async function nextBatch({ pieces, check }: Reading, from: number): Promise<Batch> {
   const rows: CheckedRow[] = [];
   const findings: Finding[] = [];
-  let rowsDone = done;
+  let rowsDone = from;
   for (;;) {
     const piece = await pieces.next();
     const batch = piece.done ? check.finish() : check.push(piece.value);
     rows.push(...batch.rows);
     findings.push(...batch.findings);
     rowsDone = Math.max(rowsDone, batch.rowsDone);
-    if (piece.done || rowsDone - done >= BATCH)
+    if (piece.done || rowsDone - from >= BATCH)
       return { rows, findings, rowsDone, isLast: piece.done === true };
     await setImmediate();
   }

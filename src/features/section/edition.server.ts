@@ -87,26 +87,30 @@ const ROW = {
 /** The same hash of an edition's rows as they are stored, a page at a time. */
 export async function storedRowsHash(tx: Tx, practiceId: string, revisionId: string) {
   const hash = new RowsHash();
-  let after = '';
+  let page = storedRows(tx, practiceId, revisionId, '');
   for (;;) {
-    const rows = await tx
-      .select(ROW)
-      .from(section)
-      .where(
-        and(
-          eq(section.practiceId, practiceId),
-          eq(section.revisionId, revisionId),
-          gt(section.designationKey, after),
-        ),
-      )
-      .orderBy(asc(section.designationKey))
-      .limit(AT_ONCE);
-    for (const row of rows) hash.add(row);
+    const rows = await page;
     const last = rows.at(-1);
     if (!last) return { count: hash.count, sha256: hash.digest() };
-    after = last.key;
+    page = storedRows(tx, practiceId, revisionId, last.key); // read while these are hashed
+    for (const row of rows) hash.add(row);
   }
 }
+
+const storedRows = (tx: Tx, practiceId: string, revisionId: string, after: string) =>
+  tx
+    .select(ROW)
+    .from(section)
+    .where(
+      and(
+        eq(section.practiceId, practiceId),
+        eq(section.revisionId, revisionId),
+        gt(section.designationKey, after),
+      ),
+    )
+    .orderBy(asc(section.designationKey))
+    .limit(AT_ONCE)
+    .execute();
 
 const COPIED = `table_slug, designation, designation_key, printed, shape, depth_mm, width_mm, mass_kg_m, area_cm2, i_major_cm4,
   i_minor_cm4, w_el_cm3, w_el_minor_cm3, w_pl_cm3, w_pl_minor_cm3, j_cm4, iw_cm6, computed, dimensions`;

@@ -7,7 +7,7 @@ import type { SectionRow, SectionTableMeta } from '../section';
  * 1. `recognise(head, file)`: what the first bytes say; a `Recognition` with a proposed `Mapping` and its open questions.
  * 2. The person answers with `answer(mapping, …)`; `openQuestions(mapping)` is empty when the file can be checked.
  * 3. `new Survey(mapping, edits)` is given the whole file in pieces and gives the `FileFacts`.
- * 4. `new RowCheck(mapping, edits, facts, { fromRow })` is given the whole file again and gives findings and rows in batches.
+ * 4. `new RowCheck(mapping, edits, facts, { fromRow })` is given the whole file again and gives findings and rows in batches; once more with `isSettled` for the rows that are kept.
  *
  * Everything is exported by `features/section/import`: also `RULES` (words of the rules), `applyFix`, `emptyReport`,
  * `addFindings(report, findings)`, `openCount(report, acceptances)`, `mayAccept(finding)`, `identityFindings` (rule 40).

@@ -14,7 +14,7 @@ import { columnOf, type Plan } from './plan';
 import { dimensionsOf, type RowRead, readRow, SIZES } from './reading';
 import type { FileLine } from './stream';
 
-/** A row and everything that is said of it. Dimensions and properties are there where the section can exist. */
+/** A row and what is said of it. Dimensions are there where the section can exist, properties where it is judged by them. */
 export type JudgedRow = RowRead & {
   dimensions: SectionDimensions | null;
   computed: SectionProperties | null;
@@ -42,8 +42,8 @@ function geometryFindings(row: RowRead, d: SectionDimensions, plan: Plan): Findi
   });
 }
 
-/** Reads a line and judges it by itself; properties only where its cells and its geometry stand. */
-export function judgeLine(line: FileLine, plan: Plan, names: NameFacts): JudgedRow {
+/** Reads a line whose file has been judged already: nothing is said but of cells and geometry that do not stand. */
+export function measureLine(line: FileLine, plan: Plan): JudgedRow {
   const row = readRow(line, plan);
   const { shape, values, findings } = row;
   const without = { ...row, dimensions: null, computed: null };
@@ -51,12 +51,20 @@ export function judgeLine(line: FileLine, plan: Plan, names: NameFacts): JudgedR
   const dimensions = dimensionsOf(shape, values, plan.mapping);
   const faults = geometryFindings(row, dimensions, plan);
   if (faults.length > 0) return { ...without, findings: [...findings, ...faults] };
+  return { ...row, dimensions, computed: null };
+}
+
+/** Reads a line and judges it by itself; properties only where its cells and its geometry stand. */
+export function judgeLine(line: FileLine, plan: Plan, names: NameFacts): JudgedRow {
+  const row = measureLine(line, plan);
+  const { dimensions, findings } = row;
+  if (!dimensions) return row;
   const computed = sectionProperties(dimensions);
   const judged = judge(row, dimensions, computed, plan);
   const isMassWrong = judged.some(({ cause }) => cause === 'mass_units' || cause === 'mass');
   const named = nameFindings(row, plan, names).filter(({ cause }) => !(isMassWrong && cause === 'name_mass'));
   const all = judged.length + named.length === 0 ? findings : [...findings, ...judged, ...named];
-  return { ...row, findings: all, dimensions, computed };
+  return { ...row, findings: all, computed };
 }
 
 export const hasError = ({ findings }: Pick<JudgedRow, 'findings'>): boolean => findings.some(isError);

@@ -55,6 +55,20 @@ describe('reading in pieces', () => {
     expect([...first.rows, ...rest]).toEqual(rows);
   });
 
+  test('rows that are settled are read as they were when they were judged', () => {
+    const bytes = bytesOf(csvOf(plausibleTable(300, 4, ['i', 'rhs', 'chs'])));
+    const { mapping } = recognised(bytes);
+    const survey = new Survey(mapping, []);
+    survey.push(bytes);
+    const surveyed = survey.finish();
+    if (!surveyed.ok) throw new Error(surveyed.refusal.message);
+    const judged = new RowCheck(mapping, [], surveyed.facts);
+    const settled = new RowCheck(mapping, [], surveyed.facts, { isSettled: true });
+    const rows = [...judged.push(bytes).rows, ...judged.finish().rows];
+    expect([...settled.push(bytes).rows, ...settled.finish().rows]).toEqual(rows);
+    expect(rows).toHaveLength(300);
+  });
+
   test('every row that is given is one of the schema', () => {
     const { rows } = importText(
       csvOf(plausibleTable(200, 9, ['i', 'channel', 'rhs', 'shs', 'chs', 'round'])),

@@ -2,7 +2,7 @@ import { asideOf, BodyReader } from './body';
 import type { CheckBatch, CheckedRow, Edit, FileFacts, Finding, Mapping, RowReading } from './contract';
 import { explained, filled, shiftFinding } from './explain';
 import { dropRow, findingOf, isError } from './finding';
-import { judgeLine } from './judge-row';
+import { judgeLine, measureLine } from './judge-row';
 import { editedLine, type Plan, planOf } from './plan';
 import { toSectionRow } from './section-row';
 import type { FileLine } from './stream';
@@ -14,15 +14,20 @@ const EXPLAINED_IN_BLOCK = 30;
 const isWorthTrying = (findings: readonly Finding[]) =>
   findings.some(isError) || findings.filter(({ severity }) => severity !== 'note').length > 1;
 
-/**
- * Second reading: every row by itself, with what the first reading found of the file. `fromRow` rows are read over
- * without a look: where a reading that was cut short goes on.
- */
+interface Reading {
+  /** Rows that are read over without a look: where a reading that was cut short goes on. */
+  readonly fromRow?: number;
+  /** The rows were judged before and nothing is open: they are read, not judged again. */
+  readonly isSettled?: boolean;
+}
+
+/** Second reading: every row by itself, with what the first reading found of the file. */
 export class RowCheck implements RowReading {
   private readonly body: BodyReader;
   private readonly plan: Plan;
   private readonly held: ReadonlySet<number>;
   private readonly fromRow: number;
+  private readonly judges: boolean;
   private rowsDone = 0;
   private tried = 0;
 
@@ -30,12 +35,14 @@ export class RowCheck implements RowReading {
     mapping: Mapping,
     edits: readonly Edit[],
     private readonly facts: FileFacts,
-    { fromRow = 0 }: { fromRow?: number } = {},
+    { fromRow = 0, isSettled = false }: Reading = {},
   ) {
     this.body = new BodyReader(mapping);
     this.plan = planOf(mapping, edits, facts);
     this.held = new Set(facts.heldLines);
     this.fromRow = fromRow;
+    // Rows that are left out for what is found in them must be judged to be known.
+    this.judges = !isSettled || this.plan.dropped.size > 0;
   }
 
   push(bytes: Uint8Array): CheckBatch {
@@ -78,6 +85,10 @@ export class RowCheck implements RowReading {
     const width = Math.max(plan.width, this.body.headings.length);
     if (cells.length < width || (cells.length > width && filled(cells.slice(width)).length > 0)) {
       return { row: null, findings: [this.ragged(line, width)] };
+    }
+    if (!this.judges) {
+      const row = measureLine(line, plan);
+      return { row, findings: row.findings };
     }
     const row = judgeLine(line, plan, facts.names);
     if (!isWorthTrying(row.findings) || this.tried >= EXPLAINED_IN_BLOCK || this.held.has(number))

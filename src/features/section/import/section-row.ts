@@ -4,6 +4,8 @@ import {
   depthOf,
   keyOfParts,
   type SectionDimensions,
+  type SectionProperties,
+  sectionProperties,
   type TabulatedName,
   widthOf,
 } from '@/engine/section';
@@ -32,15 +34,22 @@ const rounded = <D extends SectionDimensions>(dimensions: D): D => {
 };
 
 /** The supplied values; what the file does not give is computed from the dimensions and named so. Null of a faulty row. */
-export function toSectionRow(row: JudgedRow, plan: Plan): SectionRow | null {
-  const { dimensions, computed: properties, values, printed, name, line } = row;
-  if (!dimensions || !properties) return null;
+export function toSectionRow(
+  { dimensions, computed: known, values, printed, name, line }: JudgedRow,
+  plan: Plan,
+): SectionRow | null {
+  if (!dimensions) return null;
+  let found = known;
+  const properties = (): SectionProperties => {
+    found ??= sectionProperties(dimensions);
+    return found;
+  };
   const named = plan.computed === null ? '' : cellText(line.cells[plan.computed] ?? '');
   const computed = new Set(named === '' ? [] : named.split(/[\s;]+/));
   const value = (name: Exclude<TabulatedName, 'mass'>, unit: keyof typeof units, field: string): number => {
     const supplied = values[name];
     if (supplied === undefined) computed.add(field);
-    return inUnit(supplied ?? properties[name], unit);
+    return inUnit(supplied ?? properties()[name], unit);
   };
   const supplied = {
     area_cm2: value('area', 'cm2', 'area_cm2'),
@@ -61,7 +70,7 @@ export function toSectionRow(row: JudgedRow, plan: Plan): SectionRow | null {
     shape: dimensions.shape,
     depth_mm: inUnit(depthOf(dimensions), 'mm'),
     width_mm: inUnit(widthOf(dimensions), 'mm'),
-    mass_kg_m: Number((values.mass ?? plan.mapping.density * properties.area).toPrecision(EXACT)),
+    mass_kg_m: Number((values.mass ?? plan.mapping.density * properties().area).toPrecision(EXACT)),
     ...supplied,
     computed: [...computed].sort(),
     dimensions: rounded(dimensions),

@@ -119,7 +119,7 @@ function UnitCell({ column, isFixed, onAnswer }: Pick<RowProps, 'column' | 'isFi
         value={unit ?? ''}
         onChange={({ target }) => onAnswer({ kind: 'unit', column: index, value: target.value })}
       >
-        {isAsked && <option value="">Say which</option>}
+        {isAsked && <option value="">Which?</option>}
         {unitsOf(field, unit).map((one) => (
           <option key={one} value={one}>
             {unitWords(one)}

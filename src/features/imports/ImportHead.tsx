@@ -56,7 +56,9 @@ function ProblemNotice({
   problem: NonNullable<ImportHeadProps['problem']>;
 }) {
   const host = useRef<HTMLDivElement>(null);
-  useEffect(() => host.current?.scrollIntoView({ block: 'nearest' }), []);
+  useEffect(() => {
+    host.current?.scrollIntoView({ block: 'nearest' });
+  }, []);
   // A new table's address is made from its name: one fault, not two.
   const isNamed = !faults.some(({ pointer }) => pointer === '/about/name');
   const shown = faults.filter(({ pointer }) => isNamed || pointer !== '/about/table');

@@ -15,6 +15,8 @@ const SCREENS = {
   sections: '/sections?q=hea200',
   'sections without an answer': '/sections?q=zzzqqq',
   section: '/sections/american-wide-flange/W12x26',
+  stock: '/sections/stock',
+  'stock list': '/sections/stock/marrowick-steel-stock',
   jobs: '/jobs',
   job: '/jobs/Q-2417',
   'new job': '/jobs/new',

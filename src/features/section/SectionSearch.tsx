@@ -169,13 +169,16 @@ function Schedule({
 
 function NoSection({ state, onClear }: { state: PageState; onClear: () => void }) {
   const bounds = Object.keys(state.bounds).length;
+  const isStockAsked = state.stock !== '' || state.supplier !== '';
   return (
     <div className="grid min-h-240 place-content-center justify-items-center gap-10 px-20 py-28 text-center">
       <h2 className="text-[1.625rem] leading-32 font-light">No section meets all of this.</h2>
       <p className="text-zone font-normal text-ink-2">
-        {bounds > 0
-          ? 'Widen a range, or take it out; the histograms show where the sections are.'
-          : 'Check the designation, or choose another shape or table.'}
+        {isStockAsked
+          ? 'It may be made all the same: look at what is not in stock too.'
+          : bounds > 0
+            ? 'Widen a range, or take it out; the histograms show where the sections are.'
+            : 'Check the designation, or choose another shape or table.'}
       </p>
       <Button
         onClick={() => {

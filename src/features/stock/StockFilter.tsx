@@ -3,7 +3,7 @@ import { isOld, type Supplier } from './stock';
 import { ANYBODY, ageWords, stockChoices, stockQuery } from './words';
 
 /** Whose stock is asked for, as it stands in an address. */
-export interface StockAsked {
+interface StockAsked {
   /** '1' for anybody's. */
   readonly stock: string;
   /** The address of a stock list. */

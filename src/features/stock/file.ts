@@ -27,7 +27,7 @@ export interface StockFile {
   readonly columns: readonly { readonly heading: string; readonly field: StockField | null }[];
 }
 
-export type StockReading =
+type StockReading =
   | { readonly ok: true; readonly file: StockFile }
   | { readonly ok: false; readonly refusal: Refusal };
 

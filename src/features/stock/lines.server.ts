@@ -49,7 +49,7 @@ interface Page {
   readonly limit: number;
 }
 
-export interface LinePage {
+interface LinePage {
   readonly items: readonly StockLine[];
   readonly next: number | null;
   readonly total: number;

@@ -2,7 +2,6 @@ import { z } from 'zod';
 
 /** A is the cheapest; what a band costs is the practice's own scale. */
 export const PRICE_BANDS = ['A', 'B', 'C', 'D', 'E'] as const;
-export type PriceBand = (typeof PRICE_BANDS)[number];
 
 /** In m. Nothing longer is carried on a road. */
 export const LENGTH = { least: 0.5, most: 60 } as const;

@@ -59,7 +59,7 @@ export function saveSearch(user: User, body: NewSavedSearch): Promise<SavedSearc
         'conflict',
         `You keep ${MOST_SAVED} searches already. Delete one that is not needed any more.`,
       );
-    await requireFreeName(tx, user, body.name);
+    await requireFreeName(tx, user, body.name, { hint: 'Give another name, or replace that search.' });
     const row = { ...body, query: readQuery(body.query) };
     const id = crypto.randomUUID();
     await tx.insert(savedSearch).values({ practiceId, id, personId, ...row });
@@ -89,7 +89,7 @@ export function changeSavedSearch(
       query: change.query === undefined ? before.query : readQuery(change.query),
       shared: change.shared ?? before.shared,
     };
-    await requireFreeName(tx, user, after.name, id);
+    await requireFreeName(tx, user, after.name, { except: id, hint: 'Give another name.' });
     await tx.update(savedSearch).set(after).where(eq(savedSearch.id, id));
     await recordAudit(tx, user, {
       action: 'search.change',
@@ -118,7 +118,12 @@ const ofPerson = ({ practiceId, personId }: User) =>
 const oneAtATime = (tx: Tx, { personId }: User) =>
   tx.execute(sql`select pg_advisory_xact_lock(hashtext(${personId}))`);
 
-async function requireFreeName(tx: Tx, user: User, name: string, except?: string): Promise<void> {
+async function requireFreeName(
+  tx: Tx,
+  user: User,
+  name: string,
+  { except, hint }: { readonly except?: string; readonly hint: string },
+): Promise<void> {
   const [taken] = await tx
     .select({ name: savedSearch.name })
     .from(savedSearch)
@@ -134,7 +139,7 @@ async function requireFreeName(tx: Tx, user: User, name: string, except?: string
       {
         pointer: '/name',
         code: 'duplicate',
-        message: `You have a search called “${taken.name}” already. Give another name, or replace it.`,
+        message: `You have a search called “${taken.name}” already. ${hint}`,
       },
     ]);
 }

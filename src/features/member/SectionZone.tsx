@@ -63,7 +63,7 @@ export function SectionZone({ section, inputs, ...props }: SectionZoneProps) {
         onChange={setText}
       />
       <p role="status" className="text-schedule text-ink-2 empty:hidden">
-        {said(found, section)}
+        {said(found, section, text.stock !== '')}
       </p>
       {section && <Cautions {...section.values} system={system} />}
       <CandidateTable {...{ ...props, section, items, utilisations }} massName={units.massName} />
@@ -179,11 +179,14 @@ function limit(
   return reading.ok ? { value: reading.value } : { value: null, fault: reading.message };
 }
 
-function said(found: Candidates, section: DraftSection | null): string {
+function said(found: Candidates, section: DraftSection | null, isStockAsked: boolean): string {
   if (found.state === 'failed') return found.message;
   if (found.state === 'reading') return 'Looking in the section tables';
   if (found.state !== 'found') return 'Say a designation, a depth or a mass to look for.';
-  if (found.total === 0) return 'No section answers this. Allow more depth or mass, or another designation.';
+  if (found.total === 0)
+    return isStockAsked
+      ? 'Nothing in stock answers this. Allow more depth or mass, or what is not in stock.'
+      : 'No section answers this. Allow more depth or mass, or another designation.';
   return found.total > found.items.length
     ? `The lightest ${found.items.length} of ${found.total}${section ? '' : '; none is chosen yet'}.`
     : '';

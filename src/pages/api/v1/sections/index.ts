@@ -9,7 +9,7 @@ export const GET = endpoint(
   {
     summary: 'Search the sections of the issued tables',
     description:
-      'q is a designation however typed; an exact one comes first, and where none answers the nearest are offered. Ranges are inclusive, in mm, kg/m and cm; sort=-mass descends.',
+      'q is a designation however typed; an exact one comes first, and where none answers the nearest are offered. Ranges are inclusive, in mm, kg/m and cm; sort=-mass descends. stock=1 narrows to what suppliers hold, supplier to the stock list of that address; each section says who holds it.',
     query: z.strictObject({ ...sectionQueryFields, ...listQuery }),
     answer: listOf(sectionItemSchema),
   },

@@ -27,6 +27,9 @@ interface Kind {
   readonly move: string;
   /** Something of the document that makes a member's figures others. */
   readonly change: (document: Written) => Written;
+  /** A slip of whoever types it, and the place at which it is said. */
+  readonly slip: (document: Written) => Written;
+  readonly at: string;
   /** By how much the bending ratio grows: of S355 to 300 N/mm², 355/300; of 1.5 Q to 1.65 Q with G, by hand. */
   readonly grows: number;
 }
@@ -48,6 +51,11 @@ const KINDS: readonly Kind[] = [
         if (one.id === 's355') for (const band of one.strength) band.fy = '300 N/mm2';
       return document;
     },
+    slip: (document) => {
+      document.materials[0].strength[0].fu = '36 N/mm2';
+      return document;
+    },
+    at: '/materials/0/strength/0/fu',
     grows: 355 / 300,
   },
   {
@@ -60,6 +68,11 @@ const KINDS: readonly Kind[] = [
       for (const { factors } of document.strength) if (factors.Q === 1.5) factors.Q = 1.65;
       return document;
     },
+    slip: (document) => {
+      document.strength[1].factors.Q = '1.5 p';
+      return document;
+    },
+    at: '/strength/1/factors/Q',
     grows: ultimate(1.65) / ultimate(1.5),
   },
 ];
@@ -88,7 +101,7 @@ beforeAll(async () => {
   expect((await post('/api/v1/jobs', job, 'engineer')).status).toBe(201);
 }, 180_000);
 
-describe.each(KINDS)('a $kind', ({ kind, slug, folder, pin, move, change, grows }) => {
+describe.each(KINDS)('a $kind', ({ kind, slug, folder, pin, move, change, slip, at: place, grows }) => {
   const mark = `M-${pin}`;
   const url = `/api/v1/library/${kind}/${slug}`;
   const written = () => JSON.parse(readFileSync(`data/${folder}/${slug}.json`, 'utf8'));
@@ -132,7 +145,11 @@ describe.each(KINDS)('a $kind', ({ kind, slug, folder, pin, move, change, grows 
     const wrong = await save(broken, 1);
     expect(wrong.json.faults.map(({ pointer }: { pointer: string }) => pointer)).toEqual(['/name']);
     expect((await post(`${url}/revisions/2/submit`)).status).toBe(422);
-    expect((await save(change(written()), 2)).json.faults).toEqual([]);
+    const slipped = await save(slip(written()), 2);
+    expect(slipped.json.faults[0].pointer).toBe(place);
+    expect(slipped.json.document).toEqual(slip(written()));
+    expect((await post(`${url}/revisions/2/submit`)).status).toBe(422);
+    expect((await save(change(written()), 3)).json.faults).toEqual([]);
   });
 
   test('is weighed before it is issued', async () => {

@@ -1,5 +1,6 @@
 import { Button } from '@/components/ui/Button';
 import { Notice } from '@/components/ui/Notice';
+import { valueWords } from '@/features/desk/value-words';
 import type { Autosave } from './autosave.api';
 import type { DraftStore } from './store';
 import { useDraft, useSnapshot } from './use-editor';
@@ -122,11 +123,7 @@ interface VersionProps {
 
 function Version({ title, value, place, onTake }: VersionProps) {
   const text =
-    value === undefined
-      ? 'removed'
-      : typeof value === 'string'
-        ? value || 'empty'
-        : JSON.stringify(value, null, 1);
+    value === undefined ? 'removed' : typeof value === 'string' ? value || 'empty' : valueWords(value);
   return (
     <span className="grid content-start gap-6">
       <span className="caps">{title}</span>

@@ -7,7 +7,7 @@ import { useDraft, useFaultAt, useListAt, useSnapshot, useTextAt } from '@/featu
 import type { Column } from './cells';
 import { leadingVariants, newCombination } from './combinations';
 import { Grid, type GridRow, RowActions } from './Grid';
-import { type List, previewOf } from './preview';
+import { type List, usualText } from './preview';
 import { useRows } from './use-rows';
 
 const COLUMNS: readonly Column[] = [
@@ -57,7 +57,7 @@ export function CombinationZone({ list, caption, children }: CombinationZoneProp
           widths={WIDTHS}
           rows={rows}
           growth={{ list, blank: (document) => newCombination(document, list) }}
-          below={(row) => <Expanded list={list} row={row} />}
+          below={(row) => <Expanded row={row} />}
           more={(row) => <More list={list} row={row} count={count} />}
         />
       )}
@@ -97,11 +97,8 @@ function useHeads(): Readonly<Record<string, ReactNode>> {
 }
 
 /** Where the preview is not beside the table, each row says itself what it comes to. */
-function Expanded({ list, row }: { readonly list: List; readonly row: GridRow }) {
-  const text = useSnapshot(({ history }) => {
-    const line = previewOf(history.document, list, {}).find(({ at }) => at === row.at);
-    return line?.missing ?? line?.combinations.join(', or ') ?? '';
-  });
+function Expanded({ row }: { readonly row: GridRow }) {
+  const text = useSnapshot(({ history }) => usualText(history.document, row.at));
   return <span className="block text-note text-ink-2 lg:hidden">{text}</span>;
 }
 

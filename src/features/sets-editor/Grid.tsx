@@ -1,7 +1,15 @@
-import { type ClipboardEvent, type CSSProperties, type ReactNode, useId, useState } from 'react';
+import {
+  type ClipboardEvent,
+  type CSSProperties,
+  type FocusEvent,
+  type ReactNode,
+  useId,
+  useState,
+} from 'react';
 import { Button } from '@/components/ui/Button';
 import type { Pointer } from '@/features/author/edit';
 import { useReadOnly } from '@/features/author/fields';
+import type { Snapshot } from '@/features/author/store';
 import { useDraft, useIsSelected, useSnapshot } from '@/features/author/use-editor';
 import { Cell } from './Cell';
 import { type Column, type Growth, grown, isFigure, isTable, pastedRows, pasteEdits } from './cells';
@@ -113,7 +121,7 @@ interface RowProps extends Pick<GridProps, 'columns'> {
 function Row({ row, index, columns, more, below, lead, paste }: RowProps) {
   const store = useDraft();
   const isOpen = useIsSelected(row.at) && more !== undefined;
-  const { faults, onBlur } = useRowFaults(row.at, columns);
+  const { faults, isHidden, onBlur } = useRowFaults(row.at, columns);
   const noteId = useId();
   const span = columns.length + (more ? 1 : 0) + (lead ? 1 : 0);
   return (
@@ -140,9 +148,10 @@ function Row({ row, index, columns, more, below, lead, paste }: RowProps) {
             <Button
               size="small"
               aria-expanded={isOpen}
-              aria-label={`${isOpen ? 'Less' : 'More'} of ${row.name}`}
+              aria-label={`${isOpen ? 'Less' : 'More'} of ${row.name}${isHidden ? ', which has a fault' : ''}`}
               onClick={() => store.select(isOpen ? null : row.at)}
             >
+              {isHidden && <span aria-hidden="true">×</span>}
               {isOpen ? 'Less' : 'More'}
             </Button>
           </td>
@@ -168,30 +177,35 @@ function Row({ row, index, columns, more, below, lead, paste }: RowProps) {
   );
 }
 
-/** What is wrong with a row's cells, in one text. What is still empty is not blamed before the row is left. */
+/**
+ * What is wrong with a row's cells, in one text, and whether something is wrong with the rest of its fields. What is
+ * still empty is not blamed before the row is left.
+ */
 function useRowFaults(at: Pointer, columns: readonly Column[]) {
   const [isLeft, setLeft] = useState(false);
-  const faults = useSnapshot(({ faults: all }) => {
-    const own = all.filter(({ pointer }) => pointer === at || pointer.startsWith(`${at}/`));
-    const words = own.flatMap(({ pointer, code, message }) => {
-      if (!isLeft && (code === 'missing' || message.startsWith('Empty.'))) return [];
-      const key = pointer.slice(at.length + 1);
-      const column = columns.find((one) => key === one.key || key.startsWith(`${one.key}/`));
-      const isBlank = key === '' || columns.some((one) => one.key.startsWith(`${key}/`));
-      return column ? [`${column.label}: ${message}`] : isBlank ? [message] : [];
-    });
-    return words.join(' ');
-  });
-  const onBlur = ({
-    currentTarget,
-    relatedTarget,
-  }: {
-    currentTarget: Element;
-    relatedTarget: EventTarget | null;
-  }) => {
+  const columnOf = (key: string) => columns.find((one) => key === one.key || key.startsWith(`${one.key}/`));
+  /** Of several cells at once: a combination without any factor. */
+  const isAround = (key: string) => key === '' || columns.some((one) => one.key.startsWith(`${key}/`));
+  const shown = ({ faults: all }: Snapshot) =>
+    all
+      .filter(({ pointer }) => pointer === at || pointer.startsWith(`${at}/`))
+      .filter(({ code, message }) => isLeft || !(code === 'missing' || message.startsWith('Empty.')))
+      .map(({ pointer, message }) => ({ key: pointer.slice(at.length + 1), message }));
+  const faults = useSnapshot((snapshot) =>
+    shown(snapshot)
+      .flatMap(({ key, message }) => {
+        const column = columnOf(key);
+        return column ? [`${column.label}: ${message}`] : isAround(key) ? [message] : [];
+      })
+      .join(' '),
+  );
+  const isHidden = useSnapshot((snapshot) =>
+    shown(snapshot).some(({ key }) => !columnOf(key) && !isAround(key)),
+  );
+  const onBlur = ({ currentTarget, relatedTarget }: FocusEvent<Element>) => {
     if (!(relatedTarget instanceof Node && currentTarget.contains(relatedTarget))) setLeft(true);
   };
-  return { faults, onBlur };
+  return { faults, isHidden, onBlur };
 }
 
 /** Duplicate, move, remove: of an entry of a list. */

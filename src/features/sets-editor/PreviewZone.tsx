@@ -4,7 +4,7 @@ import { LOAD_GROUP_NAMES, type LoadGroup } from '@/engine/combination';
 import { useDraft, useSnapshot } from '@/features/author/use-editor';
 import type { Written } from '@/features/review/draft';
 import { VARIABLE } from './combinations';
-import { categoriesOf, LISTS, type List, type PreviewLine, previewOf, textsById } from './preview';
+import { categoriesOf, joined, LISTS, type List, type PreviewLine, previewOf, textsById } from './preview';
 
 const TITLES: Readonly<Record<List, string>> = {
   '/strength': 'For the limit state',
@@ -45,7 +45,7 @@ function CategoryChoices({ document, chosen, onChoose }: ChoicesProps) {
           key={group}
           label={`${LOAD_GROUP_NAMES[group]} as`}
           choices={categories.map(({ id, name }) => ({ value: id, label: name || id }))}
-          value={chosen[group] ?? categories[0]?.id ?? ''}
+          value={(categories.find(({ id }) => id === chosen[group]) ?? categories[0])?.id ?? ''}
           onChange={({ target }) => onChoose({ ...chosen, [group]: target.value })}
         />
       ))}
@@ -88,7 +88,7 @@ interface LineProps {
 
 function Line({ line, before, isInUse }: LineProps) {
   const store = useDraft();
-  const text = line.combinations.join('; or ');
+  const text = joined(line.combinations);
   const was = before?.get(line.id);
   const isChanged = before !== null && line.missing === null && was !== text;
   const source = [line.name, line.clause, line.fromMemory ? 'from memory' : ''].filter((part) => part !== '');

@@ -14,7 +14,7 @@ import { capital } from '@/features/desk/words';
 import { SET_READERS, type SetKind } from '@/features/review/read-set';
 import { paths } from '@/paths';
 import { type IssuedSet, referredFaults } from './criteria';
-import type { ZoneProps } from './page';
+import type { SetPageData, ZoneProps } from './page';
 import { UnknownFields } from './UnknownFields';
 import { ZONES, type Zone } from './zones';
 
@@ -32,23 +32,9 @@ const letterOf = (index: number): string => String.fromCharCode('A'.charCodeAt(0
 
 /** The draft of a set: its tables as a form, what it comes to beside it, saved while it is written. */
 export function SetEditor({ data }: ZoneProps) {
-  const { draft, isEditable, kind, sets } = data;
-  const [store] = useState(
-    () => new DraftStore(draft, !isEditable, (document, at) => capital(partName(at, document))),
-  );
-  const saver = useRef<Autosave | null>(null);
-  useEffect(() => {
-    const stopCheck = startCheck(store, checkerOf(kind, sets));
-    const autosave = isEditable ? startAutosave(store, draft) : null;
-    saver.current = autosave;
-    return () => {
-      stopCheck();
-      autosave?.stop();
-    };
-  }, [store, draft, isEditable, kind, sets]);
+  const { store, autosave } = useOpenDraft(data);
   useUndoKeys(store);
-  const autosave = () => saver.current;
-  const { form, side } = ZONES[kind];
+  const { form, side } = ZONES[data.kind];
   const zones: readonly Zone[] = [...form, ['What is new', ChangeZone]];
   return (
     <DraftContext value={store}>
@@ -66,19 +52,7 @@ export function SetEditor({ data }: ZoneProps) {
           {/* As long as the form: what sticks stays clear of the title block. */}
           <div className="flex-1">
             <div className="lg:sticky lg:top-0 lg:max-h-[calc(100vh-54px)] lg:overflow-y-auto">
-              <section className="zone">
-                <ZoneHeading letter={letterOf(zones.length)} note={<SaveNote />}>
-                  Faults
-                </ZoneHeading>
-                <FaultZone none="None. It can be sent to review." />
-                <UnknownFields />
-                <UndoButtons />
-                <p className="mt-10">
-                  <a className="link" href={paths.helpPage('sets')}>
-                    How a set is written
-                  </a>
-                </p>
-              </section>
+              <Faults letter={letterOf(zones.length)} />
               {side.map(([title, Fields], index) => (
                 <section key={title} className="zone border-t border-ink">
                   <ZoneHeading letter={letterOf(zones.length + 1 + index)}>{title}</ZoneHeading>
@@ -93,5 +67,41 @@ export function SetEditor({ data }: ZoneProps) {
         </aside>
       </div>
     </DraftContext>
+  );
+}
+
+/** The draft's state while the page is open: checked and saved as it changes. */
+function useOpenDraft({ draft, isEditable, kind, sets }: SetPageData) {
+  const [store] = useState(
+    () => new DraftStore(draft, !isEditable, (document, at) => capital(partName(at, document))),
+  );
+  const saver = useRef<Autosave | null>(null);
+  useEffect(() => {
+    const stopCheck = startCheck(store, checkerOf(kind, sets));
+    const autosave = isEditable ? startAutosave(store, draft) : null;
+    saver.current = autosave;
+    return () => {
+      stopCheck();
+      autosave?.stop();
+    };
+  }, [store, draft, isEditable, kind, sets]);
+  return { store, autosave: () => saver.current };
+}
+
+function Faults({ letter }: { readonly letter: string }) {
+  return (
+    <section className="zone">
+      <ZoneHeading letter={letter} note={<SaveNote />}>
+        Faults
+      </ZoneHeading>
+      <FaultZone none="None. It can be sent to review." />
+      <UnknownFields />
+      <UndoButtons />
+      <p className="mt-10">
+        <a className="link" href={paths.helpPage('sets')}>
+          How a set is written
+        </a>
+      </p>
+    </section>
   );
 }

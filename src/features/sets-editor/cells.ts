@@ -28,8 +28,9 @@ export type Column = {
 /** Whether a column is of numbers, which stand at the right. */
 export const isFigure = ({ kind }: Column): boolean => kind !== 'text' && kind !== 'choice';
 
-/** Of a length in SI that was typed in another unit: more digits than anybody types, fewer than a double has. */
+/** Of a quotient, and of a length that was typed in another unit: more digits than anybody types, fewer than a double has. */
 const DIGITS = 12;
+const rounded = (value: number): number => Number(value.toPrecision(DIGITS));
 
 const isFactor = (value: unknown): value is SetFactor =>
   typeof value === 'number' ||
@@ -44,12 +45,11 @@ export function cellText(value: unknown, column: Column): string {
     case 'quantity':
       return withoutUnit(String(value), column.unit);
     case 'si':
-      return typeof value === 'number'
-        ? String(Number(toUnit(value, column.unit).toPrecision(DIGITS)))
-        : String(value);
+      return typeof value === 'number' ? String(rounded(toUnit(value, column.unit))) : String(value);
+    case 'number':
+      return typeof value === 'number' ? String(rounded(value)) : String(value);
     case 'text':
     case 'choice':
-    case 'number':
       return typeof value === 'object' ? JSON.stringify(value) : String(value);
   }
 }

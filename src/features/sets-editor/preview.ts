@@ -82,6 +82,15 @@ export function previewOf(document: Written, list: List, chosen: Categories): Pr
   }));
 }
 
+/** What one row comes to with the usual categories, or what it lacks. */
+export function usualText(document: Written, at: Pointer): string {
+  const { missing, combinations } = expanded(madeWith(document), valueAt(document, at), {});
+  return missing ?? joined(combinations);
+}
+
+/** Combinations of which each is run: of groups that are not combined with one another. */
+export const joined = (combinations: readonly string[]): string => combinations.join('; or ');
+
 function expanded(set: MadeWith, one: unknown, chosen: Categories) {
   const factors = factorsOf(one);
   const missing = typeof factors === 'string' ? factors : missingFrom(set, factors);
@@ -139,4 +148,4 @@ const EMPTY: CombinationSet = {
 
 /** Lines by the id of their combination, as one text each. */
 export const textsById = (lines: readonly PreviewLine[]): ReadonlyMap<string, string> =>
-  new Map(lines.map(({ id, combinations }) => [id, combinations.join('; or ')]));
+  new Map(lines.map(({ id, combinations }) => [id, joined(combinations)]));

@@ -3,7 +3,7 @@ import { LOAD_GROUP_NAMES } from '@/engine/combination';
 import { sameValue } from '@/features/author/merge';
 import type { Written } from '@/features/review/draft';
 import { VARIABLE } from './combinations';
-import { categoriesOf, LISTS, type List, type PreviewLine, previewOf } from './preview';
+import { categoriesOf, joined, LISTS, type List, type PreviewLine, previewOf } from './preview';
 
 export interface UsedChange {
   readonly list: List;
@@ -40,7 +40,7 @@ export function usedChanges(before: Written, after: Written): UsedChange[] {
 
 const keyOf = ({ name, before, after }: UsedChange): string => JSON.stringify([name, before, after]);
 
-const textOf = ({ missing, combinations }: PreviewLine): string => missing ?? combinations.join('; or ');
+const textOf = ({ missing, combinations }: PreviewLine): string => missing ?? joined(combinations);
 
 function differences(before: Written, after: Written, list: List, chosen: Chosen): UsedChange[] {
   const [was, is] = [before, after].map((document) => previewOf(document, list, chosen));

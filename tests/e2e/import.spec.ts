@@ -15,8 +15,8 @@ test.describe.configure({ mode: 'serial' });
 test.setTimeout(240_000);
 test.use({ actionTimeout: 20_000 });
 
-const main = (page: Page, name: string | RegExp) =>
-  page.getByRole('region', { name: 'Title block' }).getByRole('button', { name });
+const block = (page: Page) => page.getByRole('region', { name: 'Title block' });
+const main = (page: Page, name: string | RegExp) => block(page).getByRole('button', { name });
 const problems = (page: Page) => page.locator('section.zone').filter({ hasText: 'Rows with problems' });
 const open = (page: Page) => page.locator('[data-finding]');
 
@@ -49,7 +49,7 @@ async function saveDraft(page: Page, note: string) {
   await page.getByLabel('Class of change').selectOption('improvement');
   await page.getByLabel('At stake').selectOption('safety');
   await main(page, 'Save as draft edition').click();
-  await page.getByRole('link', { name: 'Send for review' }).click({ timeout: 60_000 });
+  await block(page).getByRole('link', { name: 'Send for review' }).click({ timeout: 60_000 });
   await main(page, 'Send to review').click();
   await expect(page.getByText('Sent to review.')).toBeVisible();
 }
@@ -66,10 +66,11 @@ test('thirteen faults of a supplier’s file are put right, and a second person 
     await bring(page, { name: 'ottervane-issue-7.csv', text }, async () => {
       await expect(page.getByText('semicolon')).toBeVisible();
       await expect(page.getByText('comma', { exact: true })).toBeVisible();
-      await expect(page.getByText('Say which letters the axes have.')).toBeVisible();
+      await expect(page.getByText('4 wait for the axes')).toBeVisible();
+      await expect(block(page).getByText('Say which letters the axes have.')).toBeVisible();
       await page.getByRole('radio', { name: /^EN/ }).check();
       await main(page, 'Check the file').click();
-      await expect(page.getByText(/things are wrong/)).toBeVisible();
+      await expect(page.getByText(/things are missing or wrong/)).toBeVisible();
       await page.getByLabel('Name of the table').fill(NAME);
       await page.getByLabel('Supplier').fill('Ottervane Section Works');
       await page.getByLabel('Standard').fill('Works standard');
@@ -86,6 +87,8 @@ test('thirteen faults of a supplier’s file are put right, and a second person 
       await settled(page, left);
     };
     await press(/byte order mark/, 'Leave the mark out', 12);
+    // Whoever works down the list is left where the next one stands.
+    await expect(open(page).first()).toBeFocused();
     await press(/looks like dm⁶/, 'Read the column in dm⁶', 11);
     await press(/Keep one of the two/, 'Keep line 3', 10);
     await press(/decimals with a comma/, 'Read as 17,6', 9);

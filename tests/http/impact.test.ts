@@ -176,6 +176,8 @@ test('criteria: a check that passes with the one and fails with the other flips'
 }, 60_000);
 
 test('an edition of a section table: the section’s row in it, or none', async () => {
+  const section = { designation: 'IPE 330', table: 'european-i', material: 's355' };
+  await job('I-7', [{ ...member('E1'), section }]);
   const [edition] =
     await owner.sql`select r.id, r.body from revision r join document d on d.id = r.document_id
     where d.practice_id = ${people.librarian.practiceId} and d.slug = 'european-i'`;
@@ -208,6 +210,8 @@ test('an edition of a section table: the section’s row in it, or none', async 
   // Twice the second moment of area: half the deflection, and of a simple span nothing else.
   expect(b1.figures.map(({ name }: { name: string }) => name)).toEqual(['Largest deflection down']);
   expect(b1.figures[0].share).toBeCloseTo(-0.5, 9);
+  const e1 = json.items.find(({ mark }: { mark: string }) => mark === 'E1');
+  expect(e1).toMatchObject({ outcome: 'lost', message: 'Its section IPE 330 is not in the new edition.' });
 }, 60_000);
 
 test('a member is evaluated as whoever changed it last may, and said to be unread where they may not', async () => {

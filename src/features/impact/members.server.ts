@@ -52,6 +52,11 @@ export class Pinned {
     for (const { id, key, ...values } of found) this.sections.set(id, { key, values });
   }
 
+  /** Designation keys of the members' sections. */
+  sectionKeys(rows: readonly MemberRow[]): string[] {
+    return rows.flatMap(({ sectionId }) => (sectionId === null ? [] : [known(this.sections, sectionId).key]));
+  }
+
   private materialOf({ material: id, materialRevisionId }: MemberRow): Material | undefined {
     if (id === null) return undefined;
     return materialRevisionId === null
@@ -92,13 +97,37 @@ const SECTION = {
   wElCm3: section.wElCm3,
 };
 
-/** The sections of an edition by their keys. */
-export async function sectionsOf(tx: Tx, practiceId: string, revisionId: string) {
-  const rows = await tx
-    .select(SECTION)
-    .from(section)
-    .where(and(eq(section.practiceId, practiceId), eq(section.revisionId, revisionId)));
-  return new Map(rows.map(({ key, ...values }): [string, SectionValues] => [key, values]));
+/** Sections of an edition by their keys, as members come to need them: the edition may have a hundred thousand. */
+export class EditionSections {
+  /** Null is what the edition does not have. */
+  private readonly asked = new Map<string, SectionValues | null>();
+
+  constructor(
+    private readonly practiceId: string,
+    private readonly revisionId: string,
+  ) {}
+
+  async load(tx: Tx, keys: readonly string[]): Promise<void> {
+    const wanted = [...new Set(keys)].filter((key) => !this.asked.has(key));
+    if (wanted.length === 0) return;
+    const { practiceId, revisionId } = this;
+    const rows = await tx
+      .select(SECTION)
+      .from(section)
+      .where(
+        and(
+          eq(section.practiceId, practiceId),
+          eq(section.revisionId, revisionId),
+          inArray(section.designationKey, wanted),
+        ),
+      );
+    for (const key of wanted) this.asked.set(key, null);
+    for (const { key, ...values } of rows) this.asked.set(key, values);
+  }
+
+  get(key: string): SectionValues | undefined {
+    return this.asked.get(key) ?? undefined;
+  }
 }
 
 function missing(

@@ -16,16 +16,21 @@ import { type Use, usesOfRevision } from '@/features/review/uses.server';
 import { templateOf } from '@/features/template/template.server';
 import { publish } from '@/services/events';
 import { type Attempt, type RunTask, send } from '@/services/queue';
-import { Pinned, readMembers, sectionsOf, storedFigures } from './members.server';
+import { EditionSections, Pinned, readMembers, storedFigures } from './members.server';
 import { findFigures, type Ranked, type Replacement, unread, weigh } from './weigh';
 
 /** Members of one owner that are read, weighed and kept together: what a crash may lose. */
 const BATCH = 100;
 const UNDER_WAY = ['queued', 'running'] as const;
 
+/** Of an edition only the sections that members use are read. */
+type Replacing =
+  | Exclude<Replacement, { kind: 'section-table' }>
+  | { readonly kind: 'section-table'; readonly sections: EditionSections };
+
 /** What a turn holds in memory. */
 interface Weighing {
-  readonly replacement: Replacement;
+  readonly replacement: Replacing;
   readonly pinned: Pinned;
   /** Members that are not weighed yet, an owner's together. */
   readonly left: Use[];
@@ -107,7 +112,7 @@ async function weighed(tx: Tx, practiceId: string, runId: string): Promise<Reado
 
 const OUTDATED = 'The revision or the engine was changed after the impact was asked for. Ask again.';
 
-async function replacementOf(tx: Tx, row: RevisionRow): Promise<Replacement> {
+async function replacementOf(tx: Tx, row: RevisionRow): Promise<Replacing> {
   switch (row.of.kind) {
     case 'template':
       return { kind: 'template', template: templateOf(row) };
@@ -118,11 +123,11 @@ async function replacementOf(tx: Tx, row: RevisionRow): Promise<Replacement> {
     case 'material-set':
       return { kind: 'material-set', materials: materialsOf(materialSetDocument.parse(row.body)) };
     case 'section-table':
-      return { kind: 'section-table', sections: await sectionsOf(tx, row.practiceId, row.id) };
+      return { kind: 'section-table', sections: new EditionSections(row.practiceId, row.id) };
   }
 }
 
-async function criteriaReplacement(tx: Tx, row: RevisionRow): Promise<Replacement> {
+async function criteriaReplacement(tx: Tx, row: RevisionRow): Promise<Replacing> {
   const criteria = criteriaDocument.parse(row.body);
   const set =
     criteria.schema_version === 2 ? await referredSet(tx, row.practiceId, criteria.combinations) : undefined;
@@ -143,6 +148,7 @@ async function weighBatch(
     batch.map(({ memberId }) => memberId),
   );
   await pinned.load(tx, rows);
+  if (replacement.kind === 'section-table') await replacement.sections.load(tx, pinned.sectionKeys(rows));
   const byId = new Map(rows.map((row) => [row.id, row]));
   const kept: Kept[] = [];
   for (const { memberId } of batch) {

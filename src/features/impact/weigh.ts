@@ -17,7 +17,7 @@ export type Replacement =
   | { readonly kind: 'combination-set'; readonly set: CombinationSet }
   | { readonly kind: 'material-set'; readonly materials: readonly Material[] }
   /** By the section's designation key; what is not there is not in the edition. */
-  | { readonly kind: 'section-table'; readonly sections: ReadonlyMap<string, SectionValues> };
+  | { readonly kind: 'section-table'; readonly sections: Pick<ReadonlyMap<string, SectionValues>, 'get'> };
 
 /** What the member pins, as its documents say it: what a replacement is put in place of. */
 export interface Held {

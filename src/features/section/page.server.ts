@@ -13,12 +13,17 @@ import { findNeighbours } from './neighbours.server';
 import type { SectionEdition, SectionPage, SectionUses } from './page';
 import { openSection, type SectionKey } from './section.server';
 
-/** All that the page of a section shows; `usesFrom` is where its page of members begins. 404 where there is none. */
+/**
+ * All that the page of a section shows; `usesFrom` is where its page of members begins. A section that the issued edition
+ * no longer has opens in the last one that had it. 404 where there is none.
+ */
 export function readSectionPage(user: User, key: SectionKey, usesFrom: number): Promise<SectionPage> {
   requirePermission(user, 'library.read');
   const { practiceId } = user;
   return withPractice(user, async (tx) => {
-    const { detail, history, revisionId } = await openSection(tx, practiceId, key);
+    const { detail, history, revisionId } = await openSection(tx, practiceId, key, {
+      former: true,
+    });
     const kept = history.filter(({ state }) => state !== 'draft' && state !== 'in_review');
     const rows = await rowsOf(tx, practiceId, key, [...kept.map((one) => one.revisionId), revisionId]);
     const { wElMinor, wPlMinor } = rows.get(revisionId) ?? {};

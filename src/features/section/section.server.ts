@@ -52,7 +52,7 @@ export interface SectionKey {
   readonly table: string;
   /** However typed. */
   readonly designation: string;
-  /** Without it the issued edition, else the last that has the section. */
+  /** Without it the issued edition. */
   readonly edition?: number | undefined;
 }
 
@@ -69,8 +69,16 @@ interface OpenSection {
   readonly history: readonly LibraryRevision[];
 }
 
-/** The section that a key means, with its table's editions; 404 where there is none. */
-export async function openSection(tx: Tx, practiceId: string, key: SectionKey): Promise<OpenSection> {
+/**
+ * The section that a key means, with its table's editions; 404 where there is none. With `former` a section that the
+ * issued edition no longer has is that of the last one which has it.
+ */
+export async function openSection(
+  tx: Tx,
+  practiceId: string,
+  key: SectionKey,
+  { former = false } = {},
+): Promise<OpenSection> {
   const standing = await findRevision(tx, practiceId, {
     kind: SECTION_TABLE,
     slug: key.table,
@@ -78,8 +86,8 @@ export async function openSection(tx: Tx, practiceId: string, key: SectionKey): 
   });
   if (!standing) throw notFound('This section table');
   const history = await historyOf(tx, practiceId, standing.documentId);
-  const former = history.filter(({ state }) => state === 'superseded' || state === 'withdrawn');
-  const editions = key.edition === undefined ? [standing, ...former] : [standing];
+  const past = history.filter(({ state }) => state === 'superseded' || state === 'withdrawn');
+  const editions = former && key.edition === undefined ? [standing, ...past] : [standing];
   const rows = await selectRows(tx, {}).where(
     and(
       eq(section.practiceId, practiceId),

@@ -7,7 +7,7 @@ export const GET = endpoint(
   {
     summary: 'One section, and where its table comes from',
     description:
-      'Of the issued edition, else of the last that has it, or of the edition that is asked for. The designation is read however typed.',
+      'Of the issued edition, or of the edition that is asked for. The designation is read however typed.',
     query: z.strictObject({ edition: z.coerce.number().pipe(z.int().positive()).optional() }),
     answer: sectionView,
   },

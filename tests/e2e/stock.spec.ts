@@ -63,6 +63,8 @@ test('a librarian loads a supplier’s list: bad lines are put right or left out
     await page.getByLabel('Stock lengths, line 5').fill('6; 9,5');
     await page.getByRole('button', { name: 'Leave out line 6' }).click();
     await expect(page.getByText('week-48.csv: 4 of 4 lines can be kept, 1 left out.')).toBeVisible();
+    await expect(page.getByText('Say the day that the supplier said it.')).toBeVisible();
+    await page.getByLabel('This list is as of').fill(new Date().toISOString().slice(0, 10));
     await page.getByRole('button', { name: 'Keep 4 lines in place of 0' }).click();
     await expect(page.getByRole('row', { name: /^IPE 360 .* 6, 9\.5 m/ })).toBeVisible();
     await expect(page.getByRole('row', { name: /^HE 200 A .* off the shelf/ })).toBeVisible();

@@ -99,7 +99,11 @@ function FaultyLine({ line, found, tableName, onMend, onLeaveOut }: FaultyLinePr
             <FaultField field={fault.field} {...{ fault, before, row, tableName, onMend }} />
             <Suggestions {...{ fault, row, tableName, onMend }} />
           </div>
-        ) : null,
+        ) : (
+          <p key={fault.code} role="alert" className="max-w-620 font-semibold text-error">
+            {fault.message}
+          </p>
+        ),
       )}
     </div>
   );

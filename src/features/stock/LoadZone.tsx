@@ -159,7 +159,7 @@ interface KeepingProps extends ListActions {
 
 /** As of which day, and the press that keeps it. */
 function Keeping({ load, loaded, list, today, act }: KeepingProps) {
-  const [asOf, setAsOf] = useState(today);
+  const [asOf, setAsOf] = useState('');
   const { check, checked, rows, file } = loaded;
   const isTouched = rows !== checked;
   const mustCheck = check.fault_count > 0 || isTouched;
@@ -173,7 +173,7 @@ function Keeping({ load, loaded, list, today, act }: KeepingProps) {
     <div className="mt-14 flex flex-wrap items-end gap-14">
       <div className="w-180">
         <Field
-          label="Stock as of"
+          label="This list is as of"
           type="date"
           required
           max={today}
@@ -189,7 +189,10 @@ function Keeping({ load, loaded, list, today, act }: KeepingProps) {
           {load.isBusy ? 'Checking' : 'Check again'}
         </Button>
       ) : (
-        <Button onClick={() => void keep()}>
+        <Button
+          onClick={() => void keep()}
+          {...(asOf === '' && { reason: 'Say the day that the supplier said it.' })}
+        >
           Keep {counted(rows.length, 'line')} in place of {list.lines}
         </Button>
       )}

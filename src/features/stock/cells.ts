@@ -18,8 +18,8 @@ export interface ReadAs {
   readonly leadDays: 1 | 7;
 }
 
-/** How a person's own figures are read: metres and days. */
-export const BY_HAND: ReadAs = { mark: '.', lengthUnit: 'm', leadDays: 1 };
+/** How a person's own figures are read: metres and days; a comma may be meant either way. */
+export const BY_HAND: ReadAs = { mark: null, lengthUnit: 'm', leadDays: 1 };
 
 export interface CellFault {
   readonly field: StockField;

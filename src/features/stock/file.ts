@@ -10,12 +10,15 @@ import type { Holding } from './stock';
 export const MOST_BYTES = 5_000_000;
 export const MOST_LINES = 20_000;
 const MOST_COLUMNS = 250;
+const MOST_SPARE = 60; // characters
 const HEADING_LINES = 10; // a title may stand above the headings
 
 export interface StockRow {
   /** In the file, from 1. */
   readonly line: number;
   readonly texts: StockTexts;
+  /** What stands beyond the last heading: a comma inside a number, for one, moves every cell after it. */
+  readonly spare: string;
 }
 
 export interface StockFile {
@@ -142,16 +145,25 @@ function readLines(lines: readonly FileLine[], delimiter: Delimiter, encoding: E
     return refused('too_many_rows', `The list has ${body.length} lines; ${MOST_LINES} is the most.`);
   const column = (field: StockField) => headings.findIndex((one) => one.field === field);
   const places = FIELDS.map((field) => [field, column(field)] as const);
+  const isEven = body.every((line) => line.cells.length > cells.length);
   const rows = body.map(({ number, cells: row }) => ({
     line: number,
     texts: Object.fromEntries(
       places.map(([field, place]) => [field, cellText(row[place] ?? '')]),
     ) as StockTexts,
+    spare: spareOf(row.slice(cells.length), isEven),
   }));
   return {
     ok: true,
     file: { rows, as: readAs(headings, rows, delimiter), delimiter, encoding, columns: headings },
   };
+}
+
+/** Empty cells at the end of every line are a manner of writing; at the end of some they stand for a moved one. */
+function spareOf(beyond: readonly string[], isEven: boolean): string {
+  const said = beyond.map(cellText).filter((cell) => cell !== '');
+  if (said.length > 0) return said.join(' ').slice(0, MOST_SPARE);
+  return beyond.length > 0 && !isEven ? '–' : '';
 }
 
 function readAs(headings: readonly Heading[], rows: readonly StockRow[], delimiter: Delimiter): ReadAs {
@@ -191,13 +203,15 @@ const oneLine = (text: string): string => text.replaceAll(/\s+/g, ' ');
 
 /** Rows as such a CSV: what can be read in metres and days, what cannot as it stands. */
 export function rowsCsv(rows: readonly StockRow[], as: ReadAs): string {
-  const cells = rows.map(({ texts }) => {
+  const cells = rows.map(({ texts, spare }) => {
     const held = readHolding(texts, as);
     const { designation, table } = texts;
     // One line for each row, by which what is found wrong is known again.
-    return 'lengths_m' in held
-      ? toCells({ ...held, designation: oneLine(designation), table: oneLine(table) })
-      : FIELDS.map((field) => oneLine(texts[field]));
+    const written =
+      'lengths_m' in held
+        ? toCells({ ...held, designation: oneLine(designation), table: oneLine(table) })
+        : FIELDS.map((field) => oneLine(texts[field]));
+    return spare === '' ? written : [...written, oneLine(spare)];
   });
   return Papa.unparse([HEAD, ...cells]);
 }

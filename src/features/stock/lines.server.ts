@@ -99,7 +99,7 @@ export function exportStock(actor: Actor, slug: string): Promise<string> {
 async function requireSection(tx: Tx, practiceId: string, { designation, table = '' }: NewStockLine) {
   const texts = { designation, table, lengths: '', lead_time: '', price_band: '', note: '' };
   const library = await readLibrary(tx, practiceId, [designationKey(designation)]);
-  const { lines, faults } = matchRows([{ line: 1, texts }], BY_HAND, library);
+  const { lines, faults } = matchRows([{ line: 1, texts, spare: '' }], BY_HAND, library);
   const [found] = lines;
   if (found) return found;
   throw invalid(faults.map(({ field, code, message }) => ({ pointer: `/${field}`, code, message })));

@@ -22,8 +22,10 @@ export interface MatchedLine extends Holding, NamedSection {
 }
 
 /** What is wrong with a line of the list. */
-export interface StockFault extends CellFault {
+export interface StockFault extends Omit<CellFault, 'field'> {
   readonly line: number;
+  /** `line`: the line as a whole. */
+  readonly field: StockField | 'line';
   /** Sections that may be meant. */
   readonly suggestions: readonly NamedSection[];
 }
@@ -69,6 +71,9 @@ function sectionOf({ texts: { designation, table } }: StockRow, { sections, tabl
   return fault('designation', designation, 'unknown_section', message, called);
 }
 
+const SPARE =
+  'The line has more cells than there are headings: a comma inside a number may have parted it. Correct the list and bring it again, or leave the line out.';
+
 /** Every line with its section, and everything that is wrong, line by line. A list names a section once. */
 export function matchRows(rows: readonly StockRow[], as: ReadAs, library: Library): Matched {
   const lines: MatchedLine[] = [];
@@ -76,6 +81,17 @@ export function matchRows(rows: readonly StockRow[], as: ReadAs, library: Librar
   const seen = new Map<string, number>();
   for (const row of rows) {
     const { line } = row;
+    if (row.spare !== '') {
+      faults.push({
+        line,
+        field: 'line',
+        value: row.spare,
+        code: 'too_many_cells',
+        message: SPARE,
+        suggestions: [],
+      });
+      continue;
+    }
     const held = readHolding(row.texts, as);
     const found = sectionOf(row, library);
     const known = 'message' in found ? undefined : seen.get(`${found.table}/${found.designation}`);

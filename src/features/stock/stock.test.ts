@@ -49,7 +49,6 @@ describe('lengths', () => {
     ['12; 6; 12', [6, 12]],
     ['6 / 7.5 / 12 m', [6, 7.5, 12]],
     ['6 9 12', [6, 9, 12]],
-    ['6,7.5,12', [6, 7.5, 12]],
     ['6, 12 and 15.1', [6, 12, 15.1]],
     ['6000 mm; 12 m', [6, 12]],
     ['40 ft; 60 ft', [12.192, 18.288]],
@@ -67,6 +66,7 @@ describe('lengths', () => {
     ['long', 'not_a_number'],
     ['=6+6', 'not_a_number'],
     ['6 kg', 'not_a_number'],
+    ['7,5', 'ambiguous_number'],
     [Array.from({ length: 21 }, (_, at) => at + 1).join(';'), 'out_of_range'],
   ])('“%s” is refused as %s', (text, code) => {
     expect(readLengths(text, BY_HAND)).toMatchObject({ ok: false, fault: { code } });
@@ -74,6 +74,10 @@ describe('lengths', () => {
 
   test('of a file in mm are read by its heading', () => {
     expect(lengthsOf('designation,lengths (mm)\nIPE 300,6000; 12100')).toEqual([[6, 12.1]]);
+  });
+
+  test('are parted by commas where a point is the decimal mark', () => {
+    expect(lengthsOf('designation,lengths\nIPE 300,"6,7.5,12"')).toEqual([[6, 7.5, 12]]);
   });
 
   test('have decimal commas where semicolons part the cells', () => {
@@ -209,6 +213,17 @@ describe('a line', () => {
     expect(faults).toMatchObject([
       { line: 4, code: 'duplicate', message: expect.stringContaining('Line 2') },
     ]);
+  });
+
+  test('that a comma has moved along is not read as it stands, nor written anew so', () => {
+    const text = 'designation,lengths,lead time\nIPE 300,7,5,3\nHE 200 A,6,5';
+    expect(codes(text)[0]).toEqual([2, 'line', 'too_many_cells']);
+    const { rows, as } = fileOf(text);
+    expect(matched(rowsCsv(rows, as)).faults[0]).toMatchObject({ line: 2, code: 'too_many_cells' });
+    expect(codes('designation,lengths,lead time\nIPE 300,7,5,\nIPE 300,6,')).toEqual([
+      [2, 'line', 'too_many_cells'],
+    ]);
+    expect(matched('designation,lengths\nIPE 300,6,\n').lines).toMatchObject([{ lengths_m: [6] }]);
   });
 
   test('has all of its faults told at once', () => {

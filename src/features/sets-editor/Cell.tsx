@@ -14,16 +14,19 @@ interface CellProps {
   readonly place: readonly [row: number, column: number];
   /** Id of the line that says the row's faults. */
   readonly noteId: string;
+  /** The row was left once: what is still empty in it is a fault then. */
+  readonly isLeft: boolean;
   readonly onPaste: (event: ClipboardEvent<HTMLInputElement>) => void;
 }
 
 /** One field of a table: it shows what was typed while that still is what the document says. */
-export function Cell({ row, column, name, place, noteId, onPaste }: CellProps) {
+export function Cell({ row, column, name, place, noteId, isLeft, onPaste }: CellProps) {
   const store = useDraft();
   const value = useSnapshot(({ history }) => cellAt(history.document, row, column));
-  const isFaulty = useFaultIn(`${row}/${column.key}`) !== undefined;
+  const fault = useFaultIn(`${row}/${column.key}`);
   const [typed, setTyped] = useState('');
   const shown = sameValue(cellValue(typed, column), value) ? typed : cellText(value, column);
+  const isFaulty = fault !== undefined && (isLeft || shown !== '');
   const isReadOnly = useReadOnly();
   const shared = {
     'data-at': `${row}/${column.key}`,

@@ -11,6 +11,7 @@ import type { Pointer } from '@/features/author/edit';
 import { useReadOnly } from '@/features/author/fields';
 import type { Snapshot } from '@/features/author/store';
 import { useDraft, useIsSelected, useSnapshot } from '@/features/author/use-editor';
+import type { Fault } from '@/lib/app-error';
 import { Cell } from './Cell';
 import { type Column, type Growth, grown, isFigure, isTable, pastedRows, pasteEdits } from './cells';
 import { moveInGrid } from './grid-keys';
@@ -37,6 +38,8 @@ interface GridProps {
   readonly lead?: { readonly head: string; readonly width: string; readonly of: (row: GridRow) => ReactNode };
   /** Where rows that were pasted beyond the last go. */
   readonly growth?: Growth;
+  /** What of a row another table shows. */
+  readonly apart?: string;
   /** As CSS; where there is less room the table scrolls, but on a phone, where it stacks. */
   readonly leastWidth?: string;
 }
@@ -75,7 +78,12 @@ export function Grid({ caption, columns, heads = {}, widths, rows, more, below, 
           </tr>
         </thead>
         {rows.map((row, index) => (
-          <Row key={row.at} {...{ row, index, columns, more, below, lead }} paste={paste} />
+          <Row
+            key={row.at}
+            {...{ row, index, columns, more, below, lead }}
+            apart={rest.apart}
+            paste={paste}
+          />
         ))}
       </table>
       {left > 0 && (
@@ -113,15 +121,16 @@ interface RowProps extends Pick<GridProps, 'columns'> {
   readonly more: GridProps['more'] | undefined;
   readonly below: GridProps['below'] | undefined;
   readonly lead: GridProps['lead'] | undefined;
+  readonly apart: string | undefined;
   readonly row: GridRow;
   readonly index: number;
   readonly paste: (row: number, column: number) => (event: ClipboardEvent<HTMLInputElement>) => void;
 }
 
-function Row({ row, index, columns, more, below, lead, paste }: RowProps) {
+function Row({ row, index, columns, more, below, lead, apart, paste }: RowProps) {
   const store = useDraft();
   const isOpen = useIsSelected(row.at) && more !== undefined;
-  const { faults, isHidden, onBlur } = useRowFaults(row.at, columns);
+  const { faults, isHidden, isLeft, onBlur } = useRowFaults(row.at, columns, apart);
   const noteId = useId();
   const span = columns.length + (more ? 1 : 0) + (lead ? 1 : 0);
   return (
@@ -137,6 +146,7 @@ function Row({ row, index, columns, more, below, lead, paste }: RowProps) {
                 name={row.name}
                 place={[index, place]}
                 noteId={noteId}
+                isLeft={isLeft}
                 onPaste={paste(index, place)}
               />
               {place === 0 && below?.(row)}
@@ -177,11 +187,14 @@ function Row({ row, index, columns, more, below, lead, paste }: RowProps) {
   );
 }
 
+const isOfNothing = ({ code, message }: Fault): boolean =>
+  code === 'missing' || code === 'empty' || message.startsWith('Empty.');
+
 /**
  * What is wrong with a row's cells, in one text, and whether something is wrong with the rest of its fields. What is
  * still empty is not blamed before the row is left.
  */
-function useRowFaults(at: Pointer, columns: readonly Column[]) {
+function useRowFaults(at: Pointer, columns: readonly Column[], apart: string | undefined) {
   const [isLeft, setLeft] = useState(false);
   const columnOf = (key: string) => columns.find((one) => key === one.key || key.startsWith(`${one.key}/`));
   /** Of several cells at once: a combination without any factor. */
@@ -189,7 +202,7 @@ function useRowFaults(at: Pointer, columns: readonly Column[]) {
   const shown = ({ faults: all }: Snapshot) =>
     all
       .filter(({ pointer }) => pointer === at || pointer.startsWith(`${at}/`))
-      .filter(({ code, message }) => isLeft || !(code === 'missing' || message.startsWith('Empty.')))
+      .filter((fault) => isLeft || !isOfNothing(fault))
       .map(({ pointer, message }) => ({ key: pointer.slice(at.length + 1), message }));
   const faults = useSnapshot((snapshot) =>
     shown(snapshot)
@@ -200,12 +213,12 @@ function useRowFaults(at: Pointer, columns: readonly Column[]) {
       .join(' '),
   );
   const isHidden = useSnapshot((snapshot) =>
-    shown(snapshot).some(({ key }) => !columnOf(key) && !isAround(key)),
+    shown(snapshot).some(({ key }) => !columnOf(key) && !isAround(key) && !(apart && key.startsWith(apart))),
   );
   const onBlur = ({ currentTarget, relatedTarget }: FocusEvent<Element>) => {
     if (!(relatedTarget instanceof Node && currentTarget.contains(relatedTarget))) setLeft(true);
   };
-  return { faults, isHidden, onBlur };
+  return { faults, isHidden, isLeft, onBlur };
 }
 
 /** Duplicate, move, remove: of an entry of a list. */

@@ -123,6 +123,7 @@ export function MaterialZone({ kind }: { readonly kind: Kind }) {
             leastWidth="52rem"
             rows={rows}
             growth={{ list: LIST, blank }}
+            apart="strength"
             more={(row) => <More kind={kind} row={row} index={at.indexOf(row.at)} count={at.length} />}
           />
         </>

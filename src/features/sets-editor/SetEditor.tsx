@@ -4,19 +4,33 @@ import { type Autosave, startAutosave } from '@/features/author/autosave.api';
 import { ChangeZone } from '@/features/author/ChangeZone';
 import { type Checker, startCheck } from '@/features/author/check.api';
 import { DraftBlock } from '@/features/author/DraftBlock';
+import type { Pointer } from '@/features/author/edit';
 import { FaultZone } from '@/features/author/FaultZone';
 import { SaveNote, SaveNotices } from '@/features/author/Saving';
 import { DraftStore } from '@/features/author/store';
 import { UndoButtons, useUndoKeys } from '@/features/author/UndoButtons';
 import { DraftContext } from '@/features/author/use-editor';
 import { partName } from '@/features/desk/part-name';
-import { capital } from '@/features/desk/words';
+import type { Written } from '@/features/review/draft';
 import { SET_READERS, type SetKind } from '@/features/review/read-set';
 import { paths } from '@/paths';
 import { type IssuedSet, referredFaults } from './criteria';
 import type { SetPageData, ZoneProps } from './page';
 import { UnknownFields } from './UnknownFields';
 import { ZONES, type Zone } from './zones';
+
+/** Places of a set as its form calls them, where it has other words than the document. */
+const PLACES: Readonly<Record<string, string>> = {
+  '/name': 'Title',
+  '/publication': 'Standard, edition and annex',
+  '/combinations': 'Combination set',
+  '/families': 'For members of',
+  '/letters': 'Letters of the groups',
+  '/snow/caution': 'What to heed of snow',
+};
+
+const placeWords = (document: Written, at: Pointer): string =>
+  PLACES[at] ?? partName(at, document).replace(/^[a-z]/, (letter) => letter.toUpperCase());
 
 /** A set is read in a moment: no worker is needed. */
 const checkerOf = (kind: SetKind, sets: readonly IssuedSet[]): Checker => ({
@@ -72,9 +86,7 @@ export function SetEditor({ data }: ZoneProps) {
 
 /** The draft's state while the page is open: checked and saved as it changes. */
 function useOpenDraft({ draft, isEditable, kind, sets }: SetPageData) {
-  const [store] = useState(
-    () => new DraftStore(draft, !isEditable, (document, at) => capital(partName(at, document))),
-  );
+  const [store] = useState(() => new DraftStore(draft, !isEditable, placeWords));
   const saver = useRef<Autosave | null>(null);
   useEffect(() => {
     const stopCheck = startCheck(store, checkerOf(kind, sets));

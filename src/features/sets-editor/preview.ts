@@ -29,8 +29,17 @@ export interface PreviewLine {
 
 type MadeWith = Pick<CombinationSet, 'xi' | 'letters' | 'categories'>;
 
-/** What of the draft combinations are made with, as far as it can be read. */
+/** Of each document once: every row of the form asks for it at every key. */
+const known = new WeakMap<Written, MadeWith>();
+
 function madeWith(document: Written): MadeWith {
+  const made = known.get(document) ?? readParts(document);
+  known.set(document, made);
+  return made;
+}
+
+/** What of the draft combinations are made with, as far as it can be read. */
+function readParts(document: Written): MadeWith {
   const xi = valueAt(document, '/xi');
   const letters = LOAD_GROUPS.flatMap((group) => {
     const letter = textAt(document, `/letters/${group}`).trim();

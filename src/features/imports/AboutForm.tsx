@@ -8,6 +8,8 @@ export type Draft = Record<keyof About, string>;
 interface AboutFormProps {
   readonly about: Draft;
   readonly tables: readonly TableChoice[];
+  /** A number that is free for a new table. */
+  readonly free: string;
   readonly faults: readonly Fault[];
   readonly isFixed: boolean;
   readonly onAbout: (about: Draft) => void;
@@ -23,7 +25,7 @@ const slugOf = (name: string): string =>
     .slice(0, 80);
 
 /** Which table the file is, and where its values are from: no edition is without it. */
-export function AboutForm({ about, tables, faults, isFixed, onAbout }: AboutFormProps) {
+export function AboutForm({ about, tables, free, faults, isFixed, onAbout }: AboutFormProps) {
   const known = tables.find(({ slug }) => slug === about.table);
   const set = (key: keyof About) => ({
     name: key,
@@ -50,7 +52,7 @@ export function AboutForm({ about, tables, faults, isFixed, onAbout }: AboutForm
             ...about,
             table: chosen?.slug ?? '',
             name: chosen?.name ?? '',
-            reference: chosen?.reference ?? about.reference,
+            reference: chosen?.reference ?? free,
           });
         }}
       />

@@ -1,4 +1,4 @@
-import { type SyntheticEvent, useState } from 'react';
+import { type KeyboardEvent, type SyntheticEvent, useState } from 'react';
 import { Button } from '@/components/ui/Button';
 import type { Finding } from '@/features/section/import/contract';
 import { mayAccept } from '@/features/section/import/report';
@@ -129,6 +129,7 @@ function Choices({ finding, firstRow, onFix, onAccept }: ChoicesProps) {
           word="Put right"
           start={finding.read}
           onGiven={(value) => onFix({ cells: [{ line, column, value }] })}
+          onClose={() => setTyping(false)}
         />
       )}
       {isAccepting && (
@@ -138,6 +139,7 @@ function Choices({ finding, firstRow, onFix, onAccept }: ChoicesProps) {
           start=""
           least={3}
           onGiven={(reason) => onAccept({ keys: [key], reason })}
+          onClose={() => setAccepting(false)}
         />
       )}
     </div>
@@ -150,17 +152,23 @@ interface OneFieldProps {
   readonly start: string;
   readonly least?: number;
   readonly onGiven: (value: string) => void;
+  readonly onClose: () => void;
 }
 
-/** A field and its button, in the line. */
-export function OneField({ label, word, start, least = 0, onGiven }: OneFieldProps) {
+/** A field and its button, in the line. Escape closes it, back at the button that opened it. */
+export function OneField({ label, word, start, least = 0, onGiven, onClose }: OneFieldProps) {
   const [value, setValue] = useState(start);
   const send = (event: SyntheticEvent) => {
     event.preventDefault();
     if (value.trim().length >= least) onGiven(value.trim());
   };
+  const leave = ({ key, currentTarget }: KeyboardEvent<HTMLFormElement>) => {
+    if (key !== 'Escape') return;
+    currentTarget.parentElement?.querySelector<HTMLElement>('[aria-expanded="true"]')?.focus();
+    onClose();
+  };
   return (
-    <form onSubmit={send} className="flex w-full flex-wrap items-end gap-10">
+    <form onSubmit={send} onKeyDown={leave} className="flex w-full flex-wrap items-end gap-10">
       <label className="min-w-0 flex-1 basis-208">
         <span className="caps mb-2 block">{label}</span>
         <input

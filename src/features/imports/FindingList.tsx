@@ -134,6 +134,7 @@ function ForAll({ group, open, firstRow, onFix, onAccept }: ForAllProps) {
           start=""
           least={3}
           onGiven={(reason) => onAccept({ keys: [group.group], reason })}
+          onClose={() => setAccepting(false)}
         />
       )}
     </>

@@ -110,6 +110,7 @@ export function ImportWorkspace({ practice, first, tables, reference }: ImportWo
           <ZoneHeading letter="C">Where it is from</ZoneHeading>
           <AboutForm
             {...{ about, tables }}
+            free={reference}
             faults={problem?.faults ?? []}
             isFixed={!isEditable}
             onAbout={setAbout}

@@ -110,7 +110,7 @@ export function describeApi(routes: readonly Route[], origin: string): Json {
       title: 'Putlog',
       version: '1',
       description:
-        'Numbers are SI: m, N, N·m, N·m², rad, Pa, kg/m. A quantity may be a string with its unit, as people type it. A refusal is problem+json (RFC 9457).',
+        'Numbers are SI: m, N, N·m, N·m², rad, Pa, kg/m. A quantity may be a string with its unit, as people type it. Documents carry an ETag; a write to one needs If-Match with it: 428 without, 412 when it is stale. A refusal is problem+json (RFC 9457).',
     },
     servers: [{ url: origin }],
     security: [{ bearer: [] }, { session: [] }],

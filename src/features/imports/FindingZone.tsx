@@ -3,7 +3,7 @@ import { ZoneHeading } from '@/components/ui/ZoneHeading';
 import type { Answer } from '@/features/section/import/contract';
 import type { Deeds } from './FindingItem';
 import { FindingList } from './FindingList';
-import type { ImportView } from './imports';
+import type { Against, ImportView } from './imports';
 import { ProgressZone } from './ProgressZone';
 import { usePlace } from './place';
 import { QuestionList } from './QuestionList';
@@ -75,9 +75,19 @@ function CheckZone(props: FindingZoneProps) {
           onAccept={keeping(onAccept)}
         />
       )}
+      {!underWay && view.report?.against && <Beside against={view.report.against} />}
       {isEditable && <SaidBefore {...props} />}
     </section>
   );
+}
+
+/** How far the rows are those of the issued edition. */
+function Beside({ against: { matched, changed } }: { against: Against }) {
+  const words =
+    matched === 0
+      ? 'None of these rows stands in the issued edition.'
+      : `${counted(matched, 'row')} of these ${matched === 1 ? 'stands' : 'stand'} in the issued edition too, ${countWords(changed)} with other values. The draft shows them beside each other.`;
+  return <p className="mt-10 text-ink-2">{words}</p>;
 }
 
 /** What was asked of the file before it was checked, to be said otherwise. */

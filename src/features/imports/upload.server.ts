@@ -23,7 +23,7 @@ import type { About, ImportView, Recognised } from './imports';
 import { holdVersion, type ImportRow, ofImport, requireState, toView } from './rows.server';
 
 /** A file as it comes. */
-export interface Upload {
+interface Upload {
   readonly name: string;
   readonly type: string;
   readonly body: AsyncIterable<Uint8Array>;

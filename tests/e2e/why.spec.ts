@@ -70,7 +70,7 @@ test('a check of a member opens by keys alone, down to its combination, section 
     .click();
   await expect(panel(page).getByRole('link', { name: 'Open the section' })).toHaveAttribute(
     'href',
-    '/sections/european-i/IPE%20330',
+    '/sections/european-i/IPE%20330?edition=1',
   );
   await press(page, 'Escape');
   await expect(bending.locator('button:focus')).toHaveCount(1);

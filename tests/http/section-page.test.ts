@@ -135,6 +135,11 @@ test('a section that the edition in force no longer has opens in the last one th
   await expect(open('bars', 'B 10x90')).rejects.toMatchObject({ code: 'not_found' });
 });
 
+test('of a former edition the neighbours are those of the edition in force, without the section itself', async () => {
+  const { neighbours } = await open('bars', 'B 10x100', 1); // 102 mm deep in edition 3
+  expect([neighbours.series.lighter?.designation, neighbours.series.heavier]).toEqual(['B 10x60', null]);
+});
+
 test('moduli about the minor axis are those of the table', async () => {
   const { minor } = await open('european-i', 'IPE 300');
   expect((minor.w_el_minor_cm3 ?? 0) / 80.5).toBeCloseTo(1, 2); // EN 10365: W_el,z of IPE 300 is 80.5 cm³

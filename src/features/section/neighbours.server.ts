@@ -1,4 +1,4 @@
-import { and, asc, between, desc, eq, gte, inArray, lte, type SQL, sql } from 'drizzle-orm';
+import { and, asc, between, desc, eq, gte, inArray, lte, ne, or, type SQL, sql } from 'drizzle-orm';
 import type { Tx } from '@/db/client';
 import { section } from '@/db/schema/section';
 import { designationKey, designationParts } from '@/engine/section';
@@ -10,7 +10,7 @@ import type { SectionItem } from './section';
 /** As deep: within this share of the depth, as sections of one nominal depth are. */
 const AS_DEEP = 0.03;
 
-/** The sections next to one in its series and in its depth. */
+/** The sections next to one in its series and in its depth; of a former edition's its own row in force is none of them. */
 export async function findNeighbours(
   tx: Tx,
   practiceId: string,
@@ -22,9 +22,15 @@ export async function findNeighbours(
   const inSeries =
     issuedId === undefined
       ? sql`false`
-      : and(eq(section.practiceId, practiceId), eq(section.revisionId, issuedId), seriesOf(item.designation));
+      : and(
+          eq(section.practiceId, practiceId),
+          eq(section.revisionId, issuedId),
+          ne(section.designationKey, key),
+          seriesOf(item.designation),
+        );
   const inDepth = and(
     await issuedRows(tx, practiceId),
+    or(ne(section.tableSlug, item.table), ne(section.designationKey, key)),
     inArray(section.shape, [...shapeGroupOf(item.shape)]),
     between(section.depthMm, item.depth_mm * (1 - AS_DEEP), item.depth_mm * (1 + AS_DEEP)),
   );

@@ -81,7 +81,12 @@ function Links({ how, subject, isMember, onField }: LinksProps) {
     );
   if (how.kind === 'row')
     return (
-      <a className={look} href={paths.section(how.table, how.designation)}>
+      <a
+        className={look}
+        href={
+          paths.section(how.table, how.designation) + (how.edition === null ? '' : `?edition=${how.edition}`)
+        }
+      >
         Open the section
       </a>
     );

@@ -1,13 +1,14 @@
 import { type ReactNode, useState } from 'react';
 import { RichHtml } from '@/components/drawing/marks/RichHtml';
 import { Button } from '@/components/ui/Button';
-import { cleared, USUAL_BOUNDS, withRequired } from './address';
+import { type Bound, cleared, USUAL_BOUNDS, withRequired } from './address';
 import { axesOf, FIELD_WORDS, symbolOf } from './display';
 import { NumberBound } from './NumberBound';
 import { MEASURES, SECTION_MEASURES, type SectionMeasure } from './query';
 import { focusOnLine, type RequirementsProps } from './RequiredLines';
 
-const WORDS = { w_pl_min: 'Plastic modulus', i_major_min: 'Second moment', width_max: 'Width' } as const;
+const WORDS = { w_pl: 'Plastic modulus', i_major: 'Second moment', width: 'Width' } as const;
+const ENDS = { min: 'least', max: 'greatest' } as const;
 
 /** What else is asked: the three that are asked most, and any other property by its name. */
 export function Requirements({
@@ -22,23 +23,22 @@ export function Requirements({
     <div className="min-w-0 border-rule px-18 pt-14 pb-12 max-lg:border-t lg:border-l max-md:px-12 md:max-lg:nth-2:border-t-0 md:max-lg:nth-[even]:border-l">
       <h2 className="caps mb-8">Also require</h2>
       <div className="grid grid-cols-[minmax(0,1fr)_72px_40px] items-center gap-x-8 gap-y-5 text-schedule">
-        {USUAL_BOUNDS.map((name) => {
-          const measure = name.replace(/_(min|max)$/, '') as SectionMeasure;
+        {USUAL_BOUNDS.map(([measure, end]) => {
           const field = SECTION_MEASURES[measure];
-          const end = name.endsWith('min') ? 'least' : 'greatest';
+          const name: Bound = `${measure}_${end}`;
           // With a line of its own it is asked there, at both ends.
           if (state.required.includes(measure)) return null;
           return (
-            <div key={name} className="contents">
+            <div key={measure} className="contents">
               <span aria-hidden="true">
-                {WORDS[name]}{' '}
+                {WORDS[measure]}{' '}
                 <i className="whitespace-nowrap">
                   <RichHtml text={symbolOf(field, axes)} />
                 </i>
-                , {end}
+                , {ENDS[end]}
               </span>
               <NumberBound
-                label={`${FIELD_WORDS[field].name}, ${end}`}
+                label={`${FIELD_WORDS[field].name}, ${ENDS[end]}`}
                 value={state.bounds[name]}
                 {...{ name, field, system }}
                 withUnit

@@ -69,17 +69,15 @@ export function ResultLine(props: ResultLineProps) {
       <a className="link" href={paths.buildSection}>
         Make a section
       </a>
-      {rows.length > 0 && (
-        <Button
-          tone="text"
-          aria-expanded={props.isChoosing}
-          aria-controls={props.isChoosing ? props.chooser : undefined}
-          data-columns
-          onClick={props.onChoosing}
-        >
-          Columns
-        </Button>
-      )}
+      <Button
+        tone="text"
+        aria-expanded={props.isChoosing}
+        aria-controls={props.isChoosing ? props.chooser : undefined}
+        data-columns
+        onClick={props.onChoosing}
+      >
+        Columns
+      </Button>
       {rows.length > 0 && <CopyCsv {...{ rows, total, columns, system, onSaid }} />}
     </div>
   );

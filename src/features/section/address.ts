@@ -44,9 +44,19 @@ export const EMPTY: PageState = {
 };
 export const MOST_PINS = 4;
 
-/** Bounds that have a field of their own: of depth and mass either end, of these one. */
-export const USUAL_BOUNDS = ['w_pl_min', 'i_major_min', 'width_max'] as const satisfies readonly Bound[];
-const WITH_FIELD: readonly string[] = ['depth_min', 'depth_max', 'mass_min', 'mass_max', ...USUAL_BOUNDS];
+/** Asked so often that they have a field of their own, besides either end of depth and mass. */
+export const USUAL_BOUNDS = [
+  ['w_pl', 'min'],
+  ['i_major', 'min'],
+  ['width', 'max'],
+] as const satisfies readonly (readonly [SectionMeasure, 'min' | 'max'])[];
+const WITH_FIELD: readonly Bound[] = [
+  'depth_min',
+  'depth_max',
+  'mass_min',
+  'mass_max',
+  ...USUAL_BOUNDS.map(([measure, end]) => `${measure}_${end}` as const),
+];
 
 export const keyOf = ({ table, designation }: Pick<SectionItem, 'table' | 'designation'>): string =>
   `${table}/${designation}`;

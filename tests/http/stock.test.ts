@@ -157,6 +157,18 @@ describe('a stock list', () => {
     expect(json.items).toMatchObject([{ designation: 'IPE 300', lengths_m: [], lead_time_days: null }]);
   });
 
+  test('is changed by what is given of it, and by nothing else', async () => {
+    const list = await stocked();
+    const change = (json: object, version: number) =>
+      ask('PATCH', list, { token, json, headers: match(version) });
+    expect(await change({ note: 'Ring first' }, 2)).toMatchObject({
+      status: 200,
+      json: { note: 'Ring first', as_of: '2026-11-26', version: 3 },
+    });
+    for (const json of [{}, { slug: 'other' }, { as_of: '2199-01-01' }, { supplier: ' ' }])
+      expect((await change(json, 3)).status).toBe(422);
+  });
+
   test('of a supplier who has one is refused at the name', async () => {
     await begin();
     const json = { supplier: `supplier ${made} UNDER test`, as_of: '2026-11-19' };

@@ -31,6 +31,7 @@ export function AboutZone({ list, today, act }: AboutZoneProps) {
   });
   async function save(event: FormEvent) {
     event.preventDefault();
+    if (Object.keys(typed).length === 0) return setSaid({ words: 'Nothing has changed.', isWrong: false });
     if (!reading.ok) return;
     const refused = await act((version) => stockApi.change(list.slug, version, reading.value));
     if (refused === null) setTyped({});

@@ -57,15 +57,15 @@ interface Heading {
   readonly unit: string;
 }
 
+/** A unit that stands behind a heading without brackets: "length mm", "lead time in days". */
+const LAST_WORD = /^(.*?)(?: in)? (mm|cm|m|ft|feet|days|weeks|tage|wochen|jours|semaines)$/;
+
 function readHeading(cell: string): Heading {
   const heading = cellText(cell).slice(0, 100);
-  const [, name = '', unit = ''] = /^([^([]*)[([]?([^)\]]*)[)\]]?$/.exec(heading.toLowerCase()) ?? [];
-  const plain = name.replaceAll(/[\s_]+/g, ' ').trim();
-  return {
-    heading,
-    field: FIELDS.find((one) => HEADINGS[one].includes(plain)) ?? null,
-    unit: unit.trim(),
-  };
+  const [, name = '', bracketed = ''] = /^([^([]*)[([]?([^)\]]*)[)\]]?$/.exec(heading.toLowerCase()) ?? [];
+  const plain = name.replaceAll(/[\s_,]+/g, ' ').trim();
+  const [, before = plain, unit = bracketed.trim()] = (bracketed === '' && LAST_WORD.exec(plain)) || [];
+  return { heading, field: FIELDS.find((one) => HEADINGS[one].includes(before)) ?? null, unit };
 }
 
 /** The second column of the same meaning is left out. */
@@ -153,10 +153,10 @@ function readLines(lines: readonly FileLine[], delimiter: Delimiter, encoding: E
     ) as StockTexts,
     spare: spareOf(row.slice(cells.length), isEven),
   }));
-  return {
-    ok: true,
-    file: { rows, as: readAs(headings, rows, delimiter), delimiter, encoding, columns: headings },
-  };
+  const as = readAs(headings, rows, delimiter);
+  return 'code' in as
+    ? { ok: false, refusal: as }
+    : { ok: true, file: { rows, as, delimiter, encoding, columns: headings } };
 }
 
 /** Empty cells at the end of every line are a manner of writing; at the end of some they stand for a moved one. */
@@ -166,16 +166,32 @@ function spareOf(beyond: readonly string[], isEven: boolean): string {
   return beyond.length > 0 && !isEven ? '–' : '';
 }
 
-function readAs(headings: readonly Heading[], rows: readonly StockRow[], delimiter: Delimiter): ReadAs {
+const DAYS = /^(?:working )?(?:d|day|tag|jour)/;
+const WEEKS = /^(?:w|week|woche|semaine)/;
+
+/** How the cells are read, or why a heading leaves it open. */
+function readAs(
+  headings: readonly Heading[],
+  rows: readonly StockRow[],
+  delimiter: Delimiter,
+): ReadAs | Refusal {
   const unitOf = (field: StockField) => headings.find((one) => one.field === field)?.unit ?? '';
-  const length = unitOf('lengths');
+  const [length, lead] = [unitOf('lengths') || 'm', unitOf('lead_time') || 'days'];
+  if (!unitFactor(length, 'length').ok)
+    return {
+      code: 'no_headings',
+      message: `The lengths are headed “${length}”, which is no unit of length. Head them “stock lengths (m)”, or (mm), or (ft).`,
+    };
+  if (!DAYS.test(lead) && !WEEKS.test(lead))
+    return {
+      code: 'no_headings',
+      message: `The lead times are headed “${lead}”. Head them “lead time (days)” or “lead time (weeks)”.`,
+    };
+  const lengths = rows.map(({ texts }) => texts.lengths);
   return {
-    mark: lengthMarkOf(
-      rows.map(({ texts }) => texts.lengths),
-      delimiter,
-    ),
-    lengthUnit: unitFactor(length, 'length').ok ? length : 'm',
-    leadDays: /^(?:w|wk|week|woche|semaine)/.test(unitOf('lead_time')) ? 7 : 1,
+    mark: lengthMarkOf(lengths, delimiter),
+    lengthUnit: length,
+    leadDays: WEEKS.test(lead) ? 7 : 1,
   };
 }
 

@@ -76,6 +76,15 @@ describe('lengths', () => {
     expect(lengthsOf('designation,lengths (mm)\nIPE 300,6000; 12100')).toEqual([[6, 12.1]]);
   });
 
+  test.each([
+    ['Lengths mm', '7500', 7.5],
+    ['stock_lengths_mm', '7500', 7.5],
+    ['Length, in ft', '40', 12.192],
+    ['Lengths (feet)', '40', 12.192],
+  ])('under “%s” have its unit', (heading, cell, metres) => {
+    expect(lengthsOf(`designation;${heading}\nIPE 300;${cell}`)).toEqual([[metres]]);
+  });
+
   test('are parted by commas where a point is the decimal mark', () => {
     expect(lengthsOf('designation,lengths\nIPE 300,"6,7.5,12"')).toEqual([[6, 7.5, 12]]);
   });
@@ -154,6 +163,8 @@ describe('a file', () => {
     ['a web page', '<html><table></table></html>', 'markup'],
     ['headings alone', 'designation,lengths\n\n', 'no_rows'],
     ['no headings', 'IPE 300,12,5', 'no_headings'],
+    ['lengths in no unit', 'designation,lengths (bars)\nIPE 300,12', 'no_headings'],
+    ['lead times in months', 'designation,lead time (months)\nIPE 300,2', 'no_headings'],
     ['an open quote', 'designation,lengths\n"IPE 300,12\nIPE 330,12', 'unclosed_quote'],
     ['10,000 columns', `designation${',x'.repeat(10_000)}\nIPE 300`, 'too_many_columns'],
     ['too many lines', `designation\n${'IPE 300\n'.repeat(MOST_LINES + 1)}`, 'too_many_rows'],

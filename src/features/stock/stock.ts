@@ -67,11 +67,13 @@ export const NewStockList = z.strictObject({ supplier, as_of: asOf, note: listNo
 export type NewStockList = z.output<typeof NewStockList>;
 
 /** PATCH /api/v1/stock/{supplier}: what is left out stays. */
-export const StockListChange = z.strictObject({
-  supplier: supplier.optional(),
-  as_of: asOf.optional(),
-  note: listNote.optional(),
-});
+export const StockListChange = z
+  .strictObject({
+    supplier: supplier.optional(),
+    as_of: asOf.optional(),
+    note: listNote.optional(),
+  })
+  .refine((change) => Object.keys(change).length > 0, { error: 'Say what changes.' });
 export type StockListChange = z.output<typeof StockListChange>;
 
 export const StockListView = z.strictObject({

@@ -86,7 +86,7 @@ function Beside({ against: { matched, changed } }: { against: Against }) {
   const words =
     matched === 0
       ? 'None of these rows stands in the issued edition.'
-      : `${counted(matched, 'row')} of these ${matched === 1 ? 'stands' : 'stand'} in the issued edition too, ${countWords(changed)} with other values. The draft shows them beside each other.`;
+      : `${countWords(matched)} of these rows ${matched === 1 ? 'stands' : 'stand'} in the issued edition too, ${countWords(changed)} with other values. The draft shows them side by side.`;
   return <p className="mt-10 text-ink-2">{words}</p>;
 }
 

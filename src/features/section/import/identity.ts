@@ -5,6 +5,8 @@ import { findingOf } from './finding';
 type Changes = { changed: number; removed: number; of: number };
 
 const MANY = 0.05;
+/** Of a fingerprint's 64 digits; the report has them all. */
+const SHOWN = 16;
 
 /**
  * Rule 40: what the file is against the last one of its table. The same bytes bring nothing new; where more than one row
@@ -16,7 +18,7 @@ export function identityFindings(
   changes: Changes | null,
 ): Finding[] {
   if (!previous) return [];
-  const base = { rule: 40, read: current.sha256, expected: previous.sha256 } as const;
+  const base = { rule: 40, read: `SHA-256 ${current.sha256.slice(0, SHOWN)}…` } as const;
   if (current.sha256 === previous.sha256) {
     const message = `This is the file of ${previous.date}, byte for byte. There is nothing new in it.`;
     return [findingOf({ ...base, severity: 'note', cause: 'same_file', message })];

@@ -5,6 +5,7 @@ import type { User } from '@/features/account/account';
 import { takeStep } from '@/features/review/review.server';
 import { requireRevision } from '@/features/review/rows.server';
 import { build, builtRow } from '@/features/section/build';
+import { storedRowsHash } from '@/features/section/edition.server';
 import { addMadeSection, beamOf, MADE } from '@/features/section/made.server';
 import { toSectionQuery } from '@/features/section/query';
 import { findSection, searchSections } from '@/features/section/section.server';
@@ -65,6 +66,20 @@ test('what is made goes into one draft, is reviewed by another person, and is fo
     requireRevision(tx, librarian.practiceId, { ...key, number: next }),
   );
   expect(after.body).toMatchObject({ rows: 3 });
+});
+
+test('of sections kept at once the draft counts every one', async () => {
+  const names = ['A', 'B', 'C'];
+  const rows = await Promise.all(names.map((name) => made(`Pair ${name}`, '2')));
+  const [number = 0] = await Promise.all(rows.map((row) => addMadeSection(librarian, row, 'At once')));
+  await withPractice(librarian, async (tx) => {
+    const key = { kind: 'section-table', slug: MADE.slug, number } as const;
+    const { id, body } = await requireRevision(tx, librarian.practiceId, key);
+    const said = body as { rows: number; notes: readonly string[]; rows_sha256: string };
+    expect(said.notes.filter((note) => note.endsWith(': At once'))).toHaveLength(names.length);
+    const stored = await storedRowsHash(tx, librarian.practiceId, id);
+    expect([said.rows, said.rows_sha256]).toEqual([stored.count, stored.sha256]);
+  });
 });
 
 test('only a librarian keeps a section', async () => {

@@ -3,11 +3,10 @@ import type { Tx } from '@/db/client';
 import { auditEvent } from '@/db/schema/audit';
 import { document, revision } from '@/db/schema/library';
 import { withPractice } from '@/db/tenancy';
-import { ENGINE_VERSION } from '@/engine/version';
 import { requirePermission } from '@/features/account/permission';
 import { recordAudit } from '@/features/audit/audit.server';
 import { AppError, type Fault, stale } from '@/lib/app-error';
-import { fingerprint } from '@/lib/fingerprint';
+import { withFingerprint, writeBody } from './body.server';
 import {
   type DraftView,
   keepUnfinished,
@@ -46,30 +45,15 @@ export function saveDraft(
     if (before.version !== version) throw stale(await toDraftView(tx, before));
     const { body: kept, faults } = keepDocument(key, body.document);
     const isEditor = personId === before.authorId || before.editorIds.includes(personId);
-    const [saved] = await tx
-      .update(revision)
-      .set({
-        body: kept,
-        schemaVersion: schemaVersionOf(key.kind),
-        sha256: fingerprint(kept, ENGINE_VERSION),
-        engineVersion: ENGINE_VERSION,
-        version: version + 1,
-        editorIds: isEditor ? before.editorIds : [...before.editorIds, personId],
-        changeNote: body.change_note,
-        changeClass: body.change_class,
-        consequence: body.consequence,
-        abandonedAt: null,
-      })
-      .where(
-        and(
-          eq(revision.practiceId, practiceId),
-          eq(revision.id, before.id),
-          eq(revision.version, version),
-          eq(revision.state, 'draft'),
-        ),
-      )
-      .returning();
-    if (!saved) throw await overtaken(tx, practiceId, key);
+    const isSaved = await writeBody(tx, before, withFingerprint(kept), {
+      schemaVersion: schemaVersionOf(key.kind),
+      editorIds: isEditor ? before.editorIds : [...before.editorIds, personId],
+      changeNote: body.change_note,
+      changeClass: body.change_class,
+      consequence: body.consequence,
+      abandonedAt: null,
+    });
+    if (!isSaved) throw await overtaken(tx, practiceId, key);
     await nameDocument(tx, before.of, body.document);
     const after = await requireRevision(tx, practiceId, key);
     const view = await toDraftView(tx, after, faults);

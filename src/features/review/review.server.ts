@@ -2,12 +2,11 @@ import { and, eq, inArray, max, sql } from 'drizzle-orm';
 import type { Tx } from '@/db/client';
 import { document, revision } from '@/db/schema/library';
 import { withPractice } from '@/db/tenancy';
-import { ENGINE_VERSION } from '@/engine/version';
 import { requirePermission } from '@/features/account/permission';
 import { recordAudit } from '@/features/audit/audit.server';
 import { AppError, type Fault, invalid, stale } from '@/lib/app-error';
-import { fingerprint } from '@/lib/fingerprint';
 import { announce, announceToDerived } from './announce.server';
+import { withFingerprint } from './body.server';
 import { insertComment, openComments } from './comment.server';
 import type { RevisionKey } from './draft';
 import { unfinishedOf } from './draft';
@@ -64,23 +63,21 @@ export async function createDraft(tx: Tx, author: Actor, draft: Draft): Promise<
     .from(revision)
     .where(and(eq(revision.practiceId, practiceId), eq(revision.documentId, found.id)));
   const key = { documentId: found.id, revisionId: crypto.randomUUID(), number: (last?.number ?? 0) + 1 };
-  const sha256 = fingerprint(body, ENGINE_VERSION);
+  const written = withFingerprint(body);
   await tx.insert(revision).values({
     ...rest,
+    ...written,
     practiceId,
     id: key.revisionId,
     documentId: key.documentId,
     number: key.number,
-    body,
-    engineVersion: ENGINE_VERSION,
-    sha256,
     authorId: personId,
   });
   await recordAudit(tx, author, {
     action: 'revision.draft',
     subjectKind: 'revision',
     subjectId: key.revisionId,
-    after: { kind, slug, number: key.number, sha256 },
+    after: { kind, slug, number: key.number, sha256: written.sha256 },
   });
   return key;
 }

@@ -2,11 +2,10 @@ import { createHash } from 'node:crypto';
 import canonicalize from 'canonicalize';
 import { and, asc, eq, gt, sql } from 'drizzle-orm';
 import type { Tx } from '@/db/client';
-import { revision } from '@/db/schema/library';
 import { section } from '@/db/schema/section';
-import { ENGINE_VERSION } from '@/engine/version';
+import { withFingerprint, writeBody } from '@/features/review/body.server';
 import type { RevisionRow } from '@/features/review/rows.server';
-import { fingerprint } from '@/lib/fingerprint';
+import { AppError } from '@/lib/app-error';
 import type { SectionRow, SectionTableMeta } from './section';
 
 /** An edition's document: where the table comes from, and its rows by their hash, since they are rows of their own. */
@@ -125,14 +124,11 @@ export const copyRows = (tx: Tx, practiceId: string, from: string, to: string) =
 /** Says what a draft edition is, now that its rows are there; answers with its fingerprint. */
 export async function sayEdition(
   tx: Tx,
-  { practiceId, id, version }: RevisionRow,
+  draft: RevisionRow,
   body: object,
   more: { readonly editorIds?: string[]; readonly changeNote?: string } = {},
 ): Promise<string> {
-  const sha256 = fingerprint(body, ENGINE_VERSION);
-  await tx
-    .update(revision)
-    .set({ ...more, body, sha256, engineVersion: ENGINE_VERSION, version: version + 1 })
-    .where(and(eq(revision.practiceId, practiceId), eq(revision.id, id), eq(revision.state, 'draft')));
-  return sha256;
+  const written = withFingerprint(body);
+  if (await writeBody(tx, draft, written, more)) return written.sha256;
+  throw new AppError('conflict', 'Somebody else changed the draft of this edition just now. Try it again.');
 }

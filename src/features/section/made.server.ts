@@ -55,6 +55,9 @@ export function addMadeSection(actor: Actor, row: SectionRow, source: string): P
   const { practiceId } = actor;
   return withPractice(actor, async (tx) => {
     const open = (await openDraft(tx, practiceId)) ?? (await nextDraft(tx, actor));
+    // One at a time: the draft says the rows of all.
+    const isIt = and(eq(revision.practiceId, practiceId), eq(revision.id, open.id));
+    await tx.select({ id: revision.id }).from(revision).where(isIt).for('update');
     await requireNewName(tx, practiceId, open.id, row);
     await fillEdition(tx, { practiceId, revisionId: open.id, table: MADE.slug }, [row]);
     await sayRows(tx, actor, open.id, `${row.printed}: ${source}`);

@@ -20,7 +20,7 @@ import {
   slugOf,
 } from './stock';
 
-export type StockRow = typeof stockList.$inferSelect;
+type ListRow = typeof stockList.$inferSelect;
 
 const select = (tx: Tx, practiceId: string) =>
   tx
@@ -126,7 +126,7 @@ export async function viewOf(tx: Tx, practiceId: string, slug: string): Promise<
 }
 
 /** The row of a list, or 404. */
-export async function requireList(tx: Tx, practiceId: string, slug: string): Promise<StockRow> {
+export async function requireList(tx: Tx, practiceId: string, slug: string): Promise<ListRow> {
   const [row] = await tx
     .select()
     .from(stockList)
@@ -183,7 +183,7 @@ export const record = (
   entry: Omit<AuditEntry, 'subjectKind' | 'subjectId'>,
 ): Promise<void> => recordAudit(tx, actor, { ...entry, subjectKind: 'stock', subjectId: id });
 
-type Change = Partial<Pick<StockRow, 'supplier' | 'note' | 'asOf'>>;
+type Change = Partial<Pick<ListRow, 'supplier' | 'note' | 'asOf'>>;
 
 /**
  * Holds a list that a person changes, who has read this version of it: 404, or 412 with the list as it stands. Until
@@ -195,7 +195,7 @@ export async function stepList(
   slug: string,
   version: number,
   change: Change = {},
-): Promise<StockRow> {
+): Promise<ListRow> {
   const { practiceId, personId } = actor;
   const [row] = await tx
     .update(stockList)

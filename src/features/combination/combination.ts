@@ -23,6 +23,10 @@ const setFactor = z.union([factor, z.strictObject({ factor, by: z.enum(REDUCTION
   error: 'Give a number, 1.5, or one that is reduced, 1.5 ψ0.',
 });
 
+/** Of one list, and of one group. */
+export const MOST_COMBINATIONS = 60;
+export const MOST_CATEGORIES = 20;
+
 const combination = z.strictObject({
   id: key.max(60),
   name: words(120),
@@ -92,9 +96,9 @@ export const combinationSetDocument: z.ZodType<CombinationSet> = z
     letters: z.partialRecord(group, words(4)).optional(),
     snow: z.strictObject({ basis: z.enum(['nominal', 'strength_level']), caution: words(500) }),
     xi: z.number().min(0.5).max(1).optional(),
-    categories: z.partialRecord(group, z.array(category).min(1).max(20)),
-    strength: z.array(combination).min(1).max(60),
-    service: z.array(combination).min(1).max(60),
+    categories: z.partialRecord(group, z.array(category).min(1).max(MOST_CATEGORIES)),
+    strength: z.array(combination).min(1).max(MOST_COMBINATIONS),
+    service: z.array(combination).min(1).max(MOST_COMBINATIONS),
     patterns: z
       .array(
         z.strictObject({

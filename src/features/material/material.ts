@@ -20,6 +20,9 @@ const quantity = (dimension: DimensionName) =>
       });
   });
 
+/** Of one set. */
+export const MOST_MATERIALS = 200;
+
 const stress = quantity('stress');
 const words = (most: number) => z.string().trim().min(1).max(most);
 const key = z.string().regex(/^[a-z0-9]+(-[a-z0-9]+)*$/, 'Use small letters, digits and hyphens.');
@@ -100,7 +103,7 @@ export const materialSetDocument: z.ZodType<MaterialSet> = z.strictObject({
   materials: z
     .array(entry)
     .min(1)
-    .max(200)
+    .max(MOST_MATERIALS)
     .check(({ value, issues }) => {
       value.forEach(({ id }, index) => {
         if (value.findIndex((other) => other.id === id) === index) return;

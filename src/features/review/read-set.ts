@@ -10,7 +10,7 @@ import type { DocumentReading } from './read-template';
 import type { DocumentKind } from './review';
 
 /** Kinds of document that are tables of values. */
-export const SET_KINDS = ['combination-set', 'material-set', 'criteria'] as const satisfies DocumentKind[];
+const SET_KINDS = ['combination-set', 'material-set', 'criteria'] as const satisfies DocumentKind[];
 export type SetKind = (typeof SET_KINDS)[number];
 
 export const isSetKind = (kind: DocumentKind): kind is SetKind => SET_KINDS.some((one) => one === kind);

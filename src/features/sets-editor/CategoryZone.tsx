@@ -4,6 +4,7 @@ import { LOAD_GROUP_NAMES, LOAD_GROUPS, type LoadGroup } from '@/engine/combinat
 import { valueAt } from '@/features/author/edit';
 import { CheckAt, ChecksAt, TextAt, useReadOnly } from '@/features/author/fields';
 import { useDraft, useFaultAt, useListAt, useSnapshot } from '@/features/author/use-editor';
+import { MOST_CATEGORIES } from '@/features/combination/combination';
 import type { Column } from './cells';
 import { newCategory, VARIABLE } from './combinations';
 import { Grid, type GridRow, RowActions } from './Grid';
@@ -69,7 +70,7 @@ function GroupCategories({ group }: { readonly group: LoadGroup }) {
           heads={HEADS}
           widths={WIDTHS}
           rows={rows}
-          growth={{ list, blank: (document) => newCategory(document, group) }}
+          growth={{ list, most: MOST_CATEGORIES, blank: (document) => newCategory(document, group) }}
           more={(row) => <More group={group} row={row} count={count} />}
         />
       )}

@@ -4,6 +4,7 @@ import { FieldNote } from '@/components/ui/Field';
 import { LOAD_GROUP_NAMES, LOAD_GROUPS } from '@/engine/combination';
 import { CheckAt, LongTextAt, TextAt, useReadOnly } from '@/features/author/fields';
 import { useDraft, useFaultAt, useListAt, useSnapshot, useTextAt } from '@/features/author/use-editor';
+import { MOST_COMBINATIONS } from '@/features/combination/combination';
 import type { Column } from './cells';
 import { leadingVariants, newCombination } from './combinations';
 import { Grid, type GridRow, RowActions } from './Grid';
@@ -56,7 +57,7 @@ export function CombinationZone({ list, caption, children }: CombinationZoneProp
           heads={heads}
           widths={WIDTHS}
           rows={rows}
-          growth={{ list, blank: (document) => newCombination(document, list) }}
+          growth={{ list, most: MOST_COMBINATIONS, blank: (document) => newCombination(document, list) }}
           below={(row) => <Expanded row={row} />}
           more={(row) => <More list={list} row={row} count={count} />}
         />

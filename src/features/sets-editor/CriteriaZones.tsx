@@ -121,6 +121,9 @@ export function StressZone() {
   );
 }
 
+/** Pasted at once; nobody holds a member to more. */
+const MOST_LIMITS = 40;
+
 const WIDTHS = {
   'combination/id': '13rem',
   span_ratio: '5.5rem',
@@ -171,7 +174,7 @@ export function DeflectionZone({ data: { sets, system } }: ZoneProps) {
           widths={WIDTHS}
           leastWidth="46rem"
           rows={rows}
-          growth={{ list: '/deflection', blank: newLimit }}
+          growth={{ list: '/deflection', most: MOST_LIMITS, blank: newLimit }}
           more={(row) => <LimitMore row={row} count={count} />}
         />
       )}

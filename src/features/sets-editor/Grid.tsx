@@ -88,7 +88,8 @@ export function Grid({ caption, columns, heads = {}, widths, rows, more, below, 
       </table>
       {left > 0 && (
         <p role="status" className="mt-6 text-schedule text-ochre-ink">
-          {left === 1 ? 'One pasted line' : `${left} pasted lines`} had no row. Add rows, then paste again.
+          {left === 1 ? 'One pasted line' : `${left} pasted lines`} had no row, and{' '}
+          {left === 1 ? 'was' : 'were'} left out.
         </p>
       )}
     </div>
@@ -138,7 +139,7 @@ function Row({ row, index, columns, more, below, lead, apart, paste }: RowProps)
       <tr data-chosen={isOpen || undefined}>
         {lead && <th scope="row">{lead.of(row)}</th>}
         {columns.map((column, place) => (
-          <td key={column.key} data-label={column.label} className="align-top!">
+          <td key={column.key} data-label={column.label} className="align-top! max-md:items-center">
             <div className="min-w-0 max-md:w-200 max-md:flex-none">
               <Cell
                 row={row.at}

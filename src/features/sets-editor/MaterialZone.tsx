@@ -5,6 +5,7 @@ import { parentOf, textAt } from '@/features/author/edit';
 import { CheckAt, ChoiceAt, LongTextAt, TextAt, useReadOnly } from '@/features/author/fields';
 import { Row } from '@/features/author/Part';
 import { useDraft, useFaultAt, useSnapshot } from '@/features/author/use-editor';
+import { MOST_MATERIALS } from '@/features/material/material';
 import { type Column, indexOf } from './cells';
 import { Grid, type GridRow, RowActions } from './Grid';
 import { focusRow } from './grid-keys';
@@ -122,7 +123,7 @@ export function MaterialZone({ kind }: { readonly kind: Kind }) {
             widths={{ ...Object.fromEntries(columns.map(({ key }) => [key, WIDTHS[kind]])), id: '5rem' }}
             leastWidth="52rem"
             rows={rows}
-            growth={{ list: LIST, blank }}
+            growth={{ list: LIST, most: MOST_MATERIALS, blank }}
             apart="strength"
             more={(row) => <More kind={kind} row={row} index={at.indexOf(row.at)} count={at.length} />}
           />

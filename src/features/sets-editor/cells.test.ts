@@ -6,6 +6,12 @@ const factor: Column = { key: 'factors/Q', label: 'Q', kind: 'factor' };
 const number: Column = { key: 'psi0', label: 'ψ0', kind: 'number' };
 const stress: Column = { key: 'fy', label: 'f_y', kind: 'quantity', dimension: 'stress', unit: 'N/mm2' };
 const length: Column = { key: 'cap', label: 'Cap', kind: 'si', dimension: 'length', unit: 'mm' };
+const choice: Column = {
+  key: 'combination/id',
+  label: 'Combination',
+  kind: 'choice',
+  choices: [{ value: 'quasi-permanent', label: 'Quasi-permanent' }],
+};
 const name: Column = { key: 'name', label: 'Name', kind: 'text' };
 
 describe('the text of a cell', () => {
@@ -24,6 +30,8 @@ describe('the text of a cell', () => {
     ['25', length, 0.025],
     ['1 in', length, 0.0254],
     ['far', length, 'far'],
+    ['Quasi-permanent', choice, 'quasi-permanent'],
+    ['else', choice, 'else'],
     ['', { ...name, isOptional: true }, undefined],
   ])('“%s” is what its column makes of it', (text, column, value) => {
     expect(cellValue(text, column)).toEqual(value);

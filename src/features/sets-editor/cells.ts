@@ -66,8 +66,9 @@ const isBare = (text: string): boolean => /^[+-]?[\d.,]+(e[+-]?\d*)?$/i.test(tex
 export function cellValue(text: string, column: Column): unknown {
   const isEmpty = text.trim() === '' || (column.kind === 'factor' && /^\s*[–-]\s*$/.test(text));
   switch (column.kind) {
-    case 'text':
     case 'choice':
+      return column.choices.find(({ label }) => label === text)?.value ?? text;
+    case 'text':
       return isEmpty && column.isOptional ? undefined : text;
     case 'number':
       return isEmpty ? undefined : (readDecimal(text) ?? text);
@@ -122,15 +123,18 @@ export function pasteEdits(
 /** How a list gets more rows: each made of the document with the ones before it. */
 export interface Growth {
   readonly list: Pointer;
+  /** How many entries the list may have. */
+  readonly most: number;
   readonly blank: (document: Written) => object;
 }
 
-/** New rows at the end of a list: the edits that put them there, and where they are then. */
+/** New rows at the end of a list, as many as it may have: the edits that put them there, and where they are then. */
 export function grown(
   document: Written,
-  { list, blank }: Growth,
-  count: number,
+  { list, most, blank }: Growth,
+  wanted: number,
 ): { readonly edits: readonly Edit[]; readonly rows: readonly Pointer[] } {
+  const count = Math.min(wanted, most - listAt(document, list).length);
   let after = document;
   const edits: Edit[] = [];
   const rows: Pointer[] = [];

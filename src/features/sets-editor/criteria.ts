@@ -51,7 +51,7 @@ export function referredFaults(document: Written, sets: readonly IssuedSet[]): F
 }
 
 /** The categories that the criteria say, of groups alone. */
-export const categoriesIn = (document: Written): Categories =>
+const categoriesIn = (document: Written): Categories =>
   Object.fromEntries(
     LOAD_GROUPS.flatMap((group) => {
       const id = textAt(document, `/categories/${group}`);
@@ -60,7 +60,7 @@ export const categoriesIn = (document: Written): Categories =>
   );
 
 /** One limit as members are held to it: "Q + 0.5 S: span/360, overhang/180". */
-export interface LimitLine {
+interface LimitLine {
   readonly at: Pointer;
   readonly name: string;
   /** Null while its set has no such combination. */

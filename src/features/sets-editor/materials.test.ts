@@ -123,12 +123,13 @@ test('classes pasted beyond the last row become rows, in the units of their colu
   const columns = VALUES.timber_en
     .slice(0, 2)
     .map((one) => columnOf(timber, rows, one, usualUnit('timber_en', one.dimension)));
-  const growth = { list: LIST, blank: (document: Written) => newMaterial(document, 'timber_en') };
+  const growth = { list: LIST, most: 200, blank: (document: Written) => newMaterial(document, 'timber_en') };
   const more = grown(timber, growth, 2);
   const pasted = [
     ['35', '22.5'],
     ['40', '26'],
   ];
+  expect(grown(timber, { ...growth, most: rows.length + 1 }, 9).rows).toHaveLength(1);
   const { document } = applyEdits(timber, [...more.edits, ...pasteEdits(pasted, more.rows, columns).edits]);
   expect(listAt(document, LIST).slice(-2)).toMatchObject([
     { id: 'class', fm: '35 N/mm2', ft0: '22.5 N/mm2' },

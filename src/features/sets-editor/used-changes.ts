@@ -5,7 +5,7 @@ import type { Written } from '@/features/review/draft';
 import { VARIABLE } from './combinations';
 import { categoriesOf, joined, LISTS, type List, type PreviewLine, previewOf } from './preview';
 
-export interface UsedChange {
+interface UsedChange {
   readonly list: List;
   readonly name: string;
   readonly clause: string;

@@ -40,12 +40,7 @@ export function readSectionPage(user: User, key: SectionKey, usesFrom: number): 
           ...became(before && (rows.get(before.revisionId) ?? null), rows.get(one.revisionId) ?? null),
         };
       }),
-      neighbours: await findNeighbours(
-        tx,
-        practiceId,
-        detail.item,
-        history.find(({ state }) => state === 'issued')?.revisionId,
-      ),
+      neighbours: await findNeighbours(tx, practiceId, detail.item),
       uses: await usesOf(tx, practiceId, key, usesFrom),
     };
   });

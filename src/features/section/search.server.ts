@@ -1,4 +1,4 @@
-import { and, eq, inArray, type SQL, sql } from 'drizzle-orm';
+import { and, eq, sql } from 'drizzle-orm';
 import type { Tx } from '@/db/client';
 import { revision } from '@/db/schema/library';
 import { section } from '@/db/schema/section';
@@ -7,7 +7,7 @@ import { stockedNames } from '@/features/stock/of-sections.server';
 import type { SectionPlace, SectionQuery } from './query';
 import { find, named } from './register/find';
 import type { Page, RowsFound } from './register/page';
-import { issuedEditions, registerOf } from './register/read.server';
+import { registerOf } from './register/read.server';
 import type { Asked, Register } from './register/register';
 import { spreadIn } from './register/spread';
 import { itemDimensions, type SectionItem } from './section';
@@ -36,9 +36,9 @@ const COLUMNS = {
 };
 
 /** Rows with their edition: of every edition, unless narrowed. */
-export const selectRows = <T extends Record<string, SQL | SQL.Aliased>>(tx: Tx, more: T) =>
+export const selectRows = (tx: Tx) =>
   tx
-    .select({ ...COLUMNS, ...more })
+    .select(COLUMNS)
     .from(section)
     .innerJoin(
       revision,
@@ -60,12 +60,6 @@ export interface Found {
   readonly items: readonly SectionItem[];
   readonly next: SectionPlace | null;
   readonly total: number;
-}
-
-/** What stands in the issued editions. */
-export async function issuedRows(tx: Tx, practiceId: string): Promise<SQL | undefined> {
-  const revisions = (await issuedEditions(tx, practiceId)).map(({ revisionId }) => revisionId);
-  return and(eq(section.practiceId, practiceId), inArray(section.revisionId, revisions));
 }
 
 /** One page of the rows of issued editions that answer a query, after a place in the list; else the nearest. */
@@ -122,10 +116,21 @@ async function itemsOf(
   practiceId: string,
   { at, next, total }: RowsFound,
 ): Promise<Found> {
-  if (at.length === 0) return { items: [], next, total };
+  const items = await itemsAt(tx, register, practiceId, at);
+  return { items: at.flatMap((row) => items.get(row) ?? []), next, total };
+}
+
+/** The sections of rows of a register, by their row. */
+export async function itemsAt(
+  tx: Tx,
+  register: Register,
+  practiceId: string,
+  at: readonly number[],
+): Promise<ReadonlyMap<number, SectionItem>> {
+  if (at.length === 0) return new Map();
   const revisions = at.map((row) => register.edition(row).revisionId);
   const keys = at.map(register.key);
-  const rows = await selectRows(tx, {}).where(
+  const rows = await selectRows(tx).where(
     and(
       eq(section.practiceId, practiceId),
       sql`(${section.revisionId}, ${section.designationKey}) in
@@ -133,5 +138,10 @@ async function itemsOf(
     ),
   );
   const byName = new Map(rows.map((row) => [`${row.revisionId} ${row.key}`, toItem(row)]));
-  return { items: at.flatMap((_, i) => byName.get(`${revisions[i]} ${keys[i]}`) ?? []), next, total };
+  return new Map(
+    at.flatMap((row, i) => {
+      const item = byName.get(`${revisions[i]} ${keys[i]}`);
+      return item ? [[row, item] as const] : [];
+    }),
+  );
 }

@@ -88,7 +88,7 @@ export async function openSection(
   const history = await historyOf(tx, practiceId, standing.documentId);
   const past = history.filter(({ state }) => state === 'superseded' || state === 'withdrawn');
   const editions = former && key.edition === undefined ? [standing, ...past] : [standing];
-  const rows = await selectRows(tx, {}).where(
+  const rows = await selectRows(tx).where(
     and(
       eq(section.practiceId, practiceId),
       inArray(

@@ -40,7 +40,7 @@ export async function registerOf(tx: Tx, practiceId: string): Promise<Register> 
   }
 }
 
-export function issuedEditions(tx: Tx, practiceId: string): Promise<RegisterEdition[]> {
+function issuedEditions(tx: Tx, practiceId: string): Promise<RegisterEdition[]> {
   return tx
     .select({ revisionId: revision.id, table: document.slug })
     .from(revision)

@@ -66,6 +66,13 @@ test('what is made goes into one draft, is reviewed by another person, and is fo
     requireRevision(tx, librarian.practiceId, { ...key, number: next }),
   );
   expect(after.body).toMatchObject({ rows: 3 });
+  const later = await findSection(engineer, { table: MADE.slug, designation: '2/IPE300', edition: next });
+  expect(later.item.dimensions_si).toMatchObject({
+    parts: [
+      { name: 'IPE 300', rings: 1 },
+      { name: 'IPE 300', rings: 1 },
+    ],
+  });
 });
 
 test('of sections kept at once the draft counts every one', async () => {

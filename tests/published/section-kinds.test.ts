@@ -3,7 +3,7 @@ import Papa from 'papaparse';
 import { describe, expect, test } from 'vitest';
 import { type SectionDimensions, sectionProperties } from '@/engine/section';
 
-/** Printed values of kinds that no shipped table has, typed from memory before the engine ran: sections.source.md. */
+/** Printed values with the dimensions that they are of, for every kind beyond the I: typed from memory before the engine ran, sections.source.md. */
 type Printed = Readonly<Record<string, string>>;
 const FILE = new URL('../../data/published/section-kinds.csv', import.meta.url);
 const printed = Papa.parse<Printed>(readFileSync(FILE, 'utf8'), { header: true, skipEmptyLines: true }).data;

@@ -24,7 +24,6 @@ export {
   type IDimensions,
   MEASURED_SHAPES,
   type MeasuredShape,
-  type OutlineDimensions,
   SECTION_SHAPES,
   type SectionDimensions,
   type SectionShape,
@@ -47,4 +46,4 @@ export {
 } from './plausibility';
 export { type SectionProperties, sectionProperties } from './properties';
 export { roundCorners } from './rings';
-export { type FreeBending, freeBending, sectionCautions } from './unsymmetric';
+export { freeBending, sectionCautions } from './unsymmetric';

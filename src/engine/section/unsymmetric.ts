@@ -5,7 +5,7 @@ import { type SectionProperties, sectionProperties } from './properties';
 import { flatten } from './rings';
 
 /** What stands for I and W_el about the major axis where nothing holds a section sideways, m⁴ and m³. */
-export type FreeBending = { iMajor: number; wElMajor: number };
+type FreeBending = { iMajor: number; wElMajor: number };
 
 const CHORDS = 24; // of a rounded corner, as for W_pl
 

@@ -84,7 +84,7 @@ class Form {
 }
 
 /** The section of a table that a made one starts from. */
-export interface Beam {
+interface TableBeam {
   readonly designation: string;
   readonly dimensions: SectionDimensions;
 }
@@ -93,7 +93,7 @@ export interface Beam {
  * The section that the form describes. `beam` is the section of a table that it starts from, where it does. Lengths
  * without a unit are in mm, or in inches.
  */
-export function build(kind: Build, typed: Typed, beam: Beam | null, system: UnitSystemName): Built {
+export function build(kind: Build, typed: Typed, beam: TableBeam | null, system: UnitSystemName): Built {
   const form = new Form(typed, system);
   const made = MAKERS[kind](form, beam);
   if (form.faults.length > 0 || made === null) return { ok: false, faults: form.faults };
@@ -105,7 +105,7 @@ export function build(kind: Build, typed: Typed, beam: Beam | null, system: Unit
   return faults.length > 0 ? { ok: false, faults } : { ok: true, dimensions: made };
 }
 
-type Maker = (form: Form, beam: Beam | null) => SectionDimensions | null;
+type Maker = (form: Form, beam: TableBeam | null) => SectionDimensions | null;
 
 const MAKERS: Readonly<Record<Build, Maker>> = {
   side: makeSideBySide,
@@ -114,7 +114,7 @@ const MAKERS: Readonly<Record<Build, Maker>> = {
   values: makeOfValues,
 };
 
-function placeable(form: Form, beam: Beam | null): Pick<Placed, 'name' | 'of'> | null {
+function placeable(form: Form, beam: TableBeam | null): Pick<Placed, 'name' | 'of'> | null {
   if (beam === null) {
     form.refuse('beam', 'Name the beam as its table does: IPE 300, W12x26.', 'empty');
     return null;
@@ -125,7 +125,7 @@ function placeable(form: Form, beam: Beam | null): Pick<Placed, 'name' | 'of'> |
   return null;
 }
 
-function makeSideBySide(form: Form, given: Beam | null) {
+function makeSideBySide(form: Form, given: TableBeam | null) {
   const beam = placeable(form, given);
   const count = Number(form.text('count') || '2');
   const gap = form.quantity('gap', 'length', '0 or more', 0);
@@ -135,7 +135,7 @@ function makeSideBySide(form: Form, given: Beam | null) {
 }
 
 /** A plate below, a plate above, or both, each in the middle of the beam. */
-function makePlated(form: Form, given: Beam | null) {
+function makePlated(form: Form, given: TableBeam | null) {
   const beam = placeable(form, given);
   const plates = (['top', 'bottom'] as const).map((side) => {
     const [b, t] = [`${side}_width`, `${side}_thickness`] as const;

@@ -10,14 +10,14 @@ import type { User } from '@/features/account/account';
 import { requirePermission } from '@/features/account/permission';
 import { type Compared, valuesChanged } from './edition-changes';
 import { findNeighbours } from './neighbours.server';
-import type { SectionEdition, SectionPage, SectionUses } from './page';
+import type { SectionEdition, SectionPageView, SectionUses } from './page';
 import { openSection, type SectionKey } from './section.server';
 
 /**
  * All that the page of a section shows; `usesFrom` is where its page of members begins. A section that the issued edition
  * no longer has opens in the last one that had it. 404 where there is none.
  */
-export function readSectionPage(user: User, key: SectionKey, usesFrom: number): Promise<SectionPage> {
+export function readSectionPage(user: User, key: SectionKey, usesFrom: number): Promise<SectionPageView> {
   requirePermission(user, 'library.read');
   const { practiceId } = user;
   return withPractice(user, async (tx) => {

@@ -19,7 +19,7 @@ export interface Neighbours {
   readonly depth: NeighbourPair;
 }
 
-export interface SectionUse {
+interface SectionUse {
   readonly job: string;
   readonly jobName: string;
   readonly mark: string;
@@ -48,7 +48,7 @@ export interface SectionEdition {
   readonly dimensions: boolean;
 }
 
-export interface SectionPage extends SectionDetail {
+export interface SectionPageView extends SectionDetail {
   /** Moduli about the minor axis, as the table has them. */
   readonly minor: MinorModuli;
   /** Newest first. */

@@ -3,7 +3,7 @@ import { type Contribution, contributionsOf } from '@/engine/section';
 import { dimensionsOf, type SectionItem } from './section';
 
 /** A part as the page shows it, in the person's units. */
-export interface PartLine {
+interface PartLine {
   readonly name: string;
   readonly area: string;
   readonly offset: string;
@@ -11,7 +11,7 @@ export interface PartLine {
   readonly shifted: string;
 }
 
-export interface PartsTable {
+interface PartsTable {
   readonly lines: readonly PartLine[];
   /** Sums: those of I are I about the major axis. */
   readonly sum: PartLine;

@@ -39,6 +39,7 @@ const FIELDS: Readonly<Record<Build, readonly string[]>> = {
     'w_pl',
     'w_pl_minor',
     'j',
+    'iw',
   ],
 };
 

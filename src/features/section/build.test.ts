@@ -61,11 +61,13 @@ test('values are given back as they were typed, and no more is claimed', () => {
     w_el: '557 cm3',
     w_el_minor: '80.5 cm3',
     shear_area: '25.7 cm2',
+    iw: '126000 cm6',
   };
   const row = builtRow('Old joist', dimensionsOf(made('values', fields, null)), 7850);
   expect(row).toMatchObject({ computed: ['mass_kg_m'] });
   expect(row.i_major_cm4).toBeCloseTo(8360, 6);
   expect(row.w_pl_cm3).toBeCloseTo(557, 6);
+  expect(row.iw_cm6).toBeCloseTo(126000, 3);
 });
 
 test.each<[string, Build, Readonly<Record<string, string>>, SectionDimensions | null, string[]]>([

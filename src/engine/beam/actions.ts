@@ -36,17 +36,20 @@ export function actionsOf(mesh: Mesh, loads: readonly Load[]): Actions {
     if (load.kind === 'point') add(actions.force, mesh.index.get(load.at)!, Wide.of(load.p));
     else if (load.kind === 'couple') add(actions.couple, mesh.index.get(load.at)!, Wide.of(load.m));
     else {
-      const rate =
-        load.kind === 'line' && load.to > load.from
-          ? Wide.difference(load.w1, load.w0).over(Wide.difference(load.to, load.from))
-          : Wide.ZERO;
-      for (let k = mesh.index.get(load.from)!; k < mesh.index.get(load.to)!; k++) {
-        if (load.kind === 'curvature') {
-          add(actions.curvature, k, Wide.of(load.kappa));
+      const [first, end] = [mesh.index.get(load.from)!, mesh.index.get(load.to)!];
+      const size = Wide.of(load.kind === 'line' ? load.w0 : load.kappa);
+      const varies = load.kind === 'line' && load.w0 !== load.w1 && end > first;
+      const rate = varies
+        ? Wide.difference(load.w1, load.w0).over(Wide.difference(load.to, load.from))
+        : Wide.ZERO;
+      const list = load.kind === 'line' ? actions.start : actions.curvature;
+      for (let k = first; k < end; k++) {
+        if (!varies) {
+          add(list, k, size);
           continue;
         }
         const run = Wide.difference(mesh.points[k]!, load.from);
-        add(actions.start, k, Wide.of(load.w0).plus(rate.times(run)));
+        add(list, k, size.plus(rate.times(run)));
         add(actions.rate, k, rate);
       }
     }

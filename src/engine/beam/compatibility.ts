@@ -2,7 +2,7 @@ import { Sum, Wide } from '../linear/index';
 import type { Load } from '../model/index';
 import { type Actions, actionsOf } from './actions';
 import type { Flexibility } from './flexibility';
-import { workOf } from './released';
+import { resultantsOf, workOf } from './released';
 import { floorOf } from './scale';
 import { curveOf, forcesOf } from './state';
 import { holdingOf, type Superposed, yielding } from './superpose';
@@ -22,7 +22,8 @@ export function solveCompatibility(
 ): Compatibility {
   const { mesh, members, reactions, redundants, units } = flexibility;
   const actions = actionsOf(mesh, loads);
-  const released = reactions.map(({ motion }) => workOf(mesh, actions, motion).negated());
+  const resultants = resultantsOf(mesh, actions);
+  const released = reactions.map(({ motion }) => workOf(mesh, actions, resultants, motion).negated());
   const none = redundants.map(() => Wide.ZERO);
   const curve = curveOf(mesh, actions, forcesOf(mesh, actions, holdingOf(flexibility, released, none)));
   const movements = reactions.map(({ restraint }, c) => yielding(restraint, released[c]!, moved));

@@ -76,6 +76,9 @@ function ownCompliance(beam: Beam, redundant: Redundant): Wide {
 
 /** F whole, rounded. */
 export function flexibilityMatrix(rows: readonly LowerRow[]): number[][] {
-  const entry = (i: number, j: number) => rows[i]!.entries[j - rows[i]!.first]?.rounded() ?? 0;
+  const entry = (i: number, j: number) => {
+    const { first, entries } = rows[i]!;
+    return j < first ? 0 : entries[j - first]!.rounded();
+  };
   return rows.map((_, i) => rows.map((_, j) => (j <= i ? entry(i, j) : entry(j, i))));
 }

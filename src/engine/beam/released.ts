@@ -79,33 +79,50 @@ export function turnAt(parts: readonly MovingPart[], x: number, side: 'left' | '
 /** Rotation of a part; one that slides does not turn. */
 export const turnOf = ({ about, amount }: MovingPart): Wide => (about === null ? Wide.ZERO : amount);
 
+/** The load on a piece: ∫ w ds, and ∫ w s ds about its left end. */
+type Resultant = { force: Wide; moment: Wide };
+
+const HALF = Wide.of(0.5);
+const THIRD = Wide.ONE.over(3);
+
+/** Of every piece; null where there is no load. */
+export const resultantsOf = ({ lengths }: Mesh, { start, rate }: Actions): (Resultant | null)[] =>
+  lengths.map((h, k) => {
+    const [w0, w1] = [start[k]!, rate[k]!];
+    if (w0.hi === 0 && w1.hi === 0) return null;
+    const rise = w1.times(h);
+    return {
+      force: w0.plus(rise.times(HALF)).times(h),
+      moment: w0.times(HALF).plus(rise.times(THIRD)).times(h).times(h),
+    };
+  });
+
 /**
- * Work of the actions on a rigid movement. A couple at a point where the beam is cut acts at the right of the cut, so
- * that the moment there, if it is a redundant, is the one just left of the couple.
+ * Work of the actions, and of the resultants of their loads, on a rigid movement. A couple at a point where the beam is
+ * cut acts at the right of the cut, so that the moment there, if it is a redundant, is the one just left of the couple.
  */
-export function workOf(mesh: Mesh, actions: Actions, parts: readonly MovingPart[]): Wide {
+export function workOf(
+  mesh: Mesh,
+  { force, couple }: Actions,
+  resultants: readonly (Resultant | null)[],
+  parts: readonly MovingPart[],
+): Wide {
   const work = new Sum();
   const end = mesh.points.length - 1;
   for (const part of parts) {
     const [first, last] = [mesh.index.get(part.from)!, mesh.index.get(part.to)!];
     const turn = turnOf(part);
     for (let i = first; i <= last; i++) {
-      const rise = riseOf(part, mesh.points[i]!);
+      const load = i < last ? resultants[i] : null;
       // Where two parts meet the force there moves with both, and works once.
-      if (i > first || i === 0) work.subtract(actions.force[i]!.times(rise));
-      if (i < last || i === end) work.add(actions.couple[i]!.times(turn));
-      if (i < last)
-        work.subtract(pieceWork(mesh.lengths[i]!, actions.start[i]!, actions.rate[i]!, rise, turn));
+      const point = i > first || i === 0 ? force[i]! : Wide.ZERO;
+      if (load || point.hi !== 0) {
+        const rise = riseOf(part, mesh.points[i]!);
+        work.subtract(point.times(rise));
+        if (load) work.subtract(load.force.times(rise).plus(load.moment.times(turn)));
+      }
+      if (i < last || i === end) work.add(couple[i]!.times(turn));
     }
   }
   return work.total();
-}
-
-const THIRD = Wide.ONE.over(3);
-
-/** ∫ (start + rate·s)(rise + turn·s) ds over a piece of length h */
-function pieceWork(h: Wide, start: Wide, rate: Wide, rise: Wide, turn: Wide): Wide {
-  const mean = start.plus(rate.times(h).times(0.5)).times(rise);
-  const moment = start.times(0.5).plus(rate.times(h).times(THIRD)).times(h).times(turn);
-  return mean.plus(moment).times(h);
 }

@@ -16,17 +16,19 @@ export const MOST_REACHING = 120;
  * More than MOST_REACHING are moments within and between the spans instead, as far as those go (`nearRedundants`).
  */
 export function defaultRedundants(beam: Beam): Redundant[] {
-  const ranked = rankedRedundants(beam);
-  const wanted = beam.degree > MOST_REACHING ? [...nearRedundants(beam), ...ranked] : ranked;
   const chosen: Redundant[] = [];
   let frame = frameOf(beam);
-  for (const redundant of wanted) {
-    if (chosen.length === beam.degree) break;
-    const less = without(frame, redundant, placeOf(beam, redundant));
-    if (less === frame || findMotion(less) !== null) continue;
-    chosen.push(redundant);
-    frame = less;
-  }
+  const take = (wanted: readonly Redundant[]) => {
+    for (const redundant of wanted) {
+      if (chosen.length === beam.degree) return;
+      const less = without(frame, redundant, placeOf(beam, redundant));
+      if (less === frame || findMotion(less) !== null) continue;
+      chosen.push(redundant);
+      frame = less;
+    }
+  };
+  if (beam.degree > MOST_REACHING) take(nearRedundants(beam));
+  if (chosen.length < beam.degree) take(rankedRedundants(beam));
   return chosen.sort((a, b) => placeOf(beam, a) - placeOf(beam, b));
 }
 

@@ -1,4 +1,5 @@
 import { z } from 'zod';
+import { MOST_REACHING } from '@/engine/model/index';
 
 const pair = z.tuple([z.number(), z.number()]).describe('just left, just right');
 const extreme = z.strictObject({ value: z.number(), at: z.array(z.number()) });
@@ -19,7 +20,11 @@ export const solveAnswer = z.strictObject({
   extremes: z.strictObject({ shear: range, moment: range, slope: range, deflection: range }),
   contraflexure: z.array(z.number()),
   force_method: z.strictObject({
-    redundants: z.array(redundant),
+    redundants: z
+      .array(redundant)
+      .describe(
+        `Those asked for, else the beam’s own. More than ${MOST_REACHING} of these are moments over the supports and within the spans, each of which bends no more than the spans beside it.`,
+      ),
     eligible: z.array(redundant),
     flexibility: z.array(z.array(z.number())),
     gaps: z.array(z.number()),

@@ -99,14 +99,8 @@ function lines(members: readonly Member[], up: AtPoint, turn: AtPoint) {
   // What is left of a sum that cancels is exactly nothing: so a unit state ends where it ends.
   const shear = settled(shears, CANCELLED * largest(shears));
   const moment = settled(moments, CANCELLED * largest(moments));
-  const carries = shear.map((v, m) => v.hi !== 0 || moment[m]!.hi !== 0);
-  const [skipped, last] = [Math.max(0, carries.indexOf(true)), carries.lastIndexOf(true)];
-  return {
-    first: start + skipped,
-    last: start + last,
-    shear: shear.slice(skipped),
-    moment: moment.slice(skipped),
-  };
+  const last = start + shear.findLastIndex((v, m) => v.hi !== 0 || moment[m]!.hi !== 0);
+  return { first: start, last, shear, moment };
 }
 
 /** What a unit state does to the members that carry it: ∫ m/EI dx, and ∫ m s/EI dx + ∫ v/GA dx with s from the left end. */

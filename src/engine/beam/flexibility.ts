@@ -38,7 +38,7 @@ export function flexibilityOf(beam: Beam, chosen?: readonly Redundant[]): Flexib
   const redundants = chosen?.map((r) => placeRedundant(beam, r)) ?? defaultRedundants(beam);
   const releases = redundants.flatMap((r) => (r.component === 'moment' ? [r.at] : []));
   const mesh = meshOf(beam, releases);
-  const joints = new Set([0, beam.length, ...beam.supports.map(({ at }) => at), ...beam.hinges, ...releases]);
+  const joints = new Set([...beam.supports.map(({ at }) => at), ...beam.hinges, ...releases]);
   const numbers = [...joints].map((x) => mesh.index.get(x)!).sort((a, b) => a - b);
   const members = membersOf(mesh, numbers);
   const reactions = reactionsWithout(beam, redundants);

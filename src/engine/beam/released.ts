@@ -62,11 +62,9 @@ function unitMotion(
 export const reaches = (parts: readonly MovingPart[], x: number): boolean =>
   parts[0]!.from <= x && x <= parts.at(-1)!.to;
 
-/** Vertical movement at x; the parts meet in the hinges, and what is beside them stays. */
-export function riseAt(parts: readonly MovingPart[], x: number): Wide {
-  const part = parts.find(({ from, to }) => from <= x && x <= to);
-  return part ? riseOf(part, x) : Wide.ZERO;
-}
+/** Vertical movement at an x that it reaches; the parts meet in the hinges. */
+export const riseAt = (parts: readonly MovingPart[], x: number): Wide =>
+  riseOf(parts.find(({ from, to }) => from <= x && x <= to)!, x);
 
 /** Rotation just left or just right of x; at the left end of the beam there is but one. */
 export function turnAt(parts: readonly MovingPart[], x: number, side: 'left' | 'right'): Wide {

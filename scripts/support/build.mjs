@@ -3,7 +3,8 @@ import { existsSync, readdirSync, readFileSync, rmSync, statSync, writeFileSync 
 import { join } from 'node:path';
 import { ROOT, run, step } from './command.mjs';
 
-const SOURCES = ['src', 'public', 'data', 'astro.config.mjs', 'tsconfig.json', 'package-lock.json'];
+const WORKER = 'scripts/worker.ts';
+const SOURCES = ['src', 'public', 'data', WORKER, 'astro.config.mjs', 'tsconfig.json', 'package-lock.json'];
 const STAMP = join(ROOT, 'dist/.sources');
 
 /** Builds when a source has changed since the last whole build. */
@@ -12,7 +13,25 @@ export async function ensureBuild() {
   if (existsSync(STAMP) && readFileSync(STAMP, 'utf8') === sources) return;
   rmSync(STAMP, { force: true });
   await step('Building the pages', () => run(process.execPath, ['node_modules/astro/astro.js', 'build']));
+  await step('Building the worker', buildWorker);
   writeFileSync(STAMP, sources);
+}
+
+/** In one file: loaded as TypeScript it would start seconds later and read a file of 100,000 rows a fifth slower. */
+async function buildWorker() {
+  const { build } = await import('esbuild'); // once the packages are there
+  await build({
+    absWorkingDir: ROOT,
+    entryPoints: [WORKER],
+    outfile: 'dist/worker.mjs',
+    bundle: true,
+    format: 'esm',
+    platform: 'node',
+    target: 'node20',
+    packages: 'external',
+    sourcemap: true,
+    logLevel: 'warning',
+  });
 }
 
 function hashSources() {

@@ -1,3 +1,4 @@
+import { constants, setPriority } from 'node:os';
 import { closeConnection } from '@/db/client';
 import { sweepSignIns } from '@/features/account/sweep.server';
 import { BEAT, beat } from '@/features/admin/health.server';
@@ -45,6 +46,8 @@ async function work(): Promise<Queue> {
     throw new Error('DATABASE_URL is not set: give the connection of the role that web and worker share');
   const mailing = readMailing(process.env);
   if (!mailing) log.info('no mail is sent: PUTLOG_SMTP_URL is not set');
+  // On a machine that both share, whoever waits for a page comes before whoever waits for a file.
+  setPriority(constants.priority.PRIORITY_BELOW_NORMAL);
   const startedAt = new Date();
   const queue = await workQueue(url, handlers, (error) => log.error('queue', { error }));
   await beat(startedAt);

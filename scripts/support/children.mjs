@@ -14,7 +14,7 @@ export const PROGRAMS = {
   web: ['scripts/web.mjs'],
   // It reads files of 100,000 rows. Collected so late as by default, what it is done with would take 450 MB; so it is 240.
   worker: [
-    '--max-semi-space-size=16',
+    '--max-semi-space-size=32',
     '--heap-growing-percent=40',
     '--enable-source-maps',
     'dist/worker.mjs',

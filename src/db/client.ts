@@ -10,6 +10,8 @@ export function connect(url: string, connections = 10) {
     onnotice: () => undefined,
     connection: {
       application_name: 'putlog',
+      // Row-level security makes the planner guess high, and compiling takes longer than any of our queries.
+      jit: false,
       // A statement that hangs, or a transaction that was forgotten, frees its locks by itself.
       statement_timeout: 30_000,
       idle_in_transaction_session_timeout: 60_000,

@@ -304,7 +304,8 @@ export type FileFacts = {
  */
 export type NameFacts = { mass: boolean; sizes: boolean; depths: Readonly<Record<string, number>> };
 
-export type CheckedRow = { line: number; row: SectionRow };
+/** The row is worked out when it is asked for: a first edition is checked against none. */
+export type CheckedRow = { line: number; readonly row: SectionRow };
 /** `rowsDone` counts from the start of the file: where to go on from. */
 export type CheckBatch = { rowsDone: number; rows: CheckedRow[]; findings: Finding[] };
 

@@ -1,10 +1,11 @@
+import type { SectionRow } from '../section';
 import { asideOf, BodyReader } from './body';
 import type { CheckBatch, CheckedRow, Edit, FileFacts, Finding, Mapping, RowReading } from './contract';
 import { explained, filled, shiftFinding } from './explain';
 import { dropRow, findingOf, isError } from './finding';
 import { judgeLine, measureLine } from './judge-row';
 import { editedLine, type Plan, planOf } from './plan';
-import { toSectionRow } from './section-row';
+import { isSound, toSectionRow } from './section-row';
 import type { FileLine } from './stream';
 
 /** Rows of which as many are explained by trying; trying costs as much as hundreds of sound rows. */
@@ -72,9 +73,17 @@ export class RowCheck implements RowReading {
     const { dropped } = this.plan;
     if (dropped.size > 0 && found.findings.some(({ group }) => dropped.has(group))) return;
     for (const finding of found.findings) findings.push(finding);
-    if (!found.row || this.held.has(line.number) || found.findings.some(isError)) return;
-    const row = toSectionRow(found.row, this.plan);
-    if (row) rows.push({ line: line.number, row });
+    const { row } = found;
+    if (!row || !isSound(row) || this.held.has(line.number) || found.findings.some(isError)) return;
+    const { plan } = this;
+    let made: SectionRow | undefined;
+    rows.push({
+      line: line.number,
+      get row() {
+        made ??= toSectionRow(row, plan);
+        return made;
+      },
+    });
   }
 
   private findingsOf(line: FileLine) {

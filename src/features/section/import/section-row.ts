@@ -33,12 +33,14 @@ const rounded = <D extends SectionDimensions>(dimensions: D): D => {
   return lengths as D;
 };
 
-/** The supplied values; what the file does not give is computed from the dimensions and named so. Null of a faulty row. */
+type SoundRow = JudgedRow & { dimensions: SectionDimensions };
+export const isSound = (row: JudgedRow): row is SoundRow => row.dimensions !== null;
+
+/** The supplied values; what the file does not give is computed from the dimensions and named so. */
 export function toSectionRow(
-  { dimensions, computed: known, values, printed, name, line }: JudgedRow,
+  { dimensions, computed: known, values, printed, name, line }: SoundRow,
   plan: Plan,
-): SectionRow | null {
-  if (!dimensions) return null;
+): SectionRow {
   let found = known;
   const properties = (): SectionProperties => {
     found ??= sectionProperties(dimensions);

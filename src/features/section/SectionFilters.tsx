@@ -28,7 +28,7 @@ export function SectionFilters(props: SectionFiltersProps) {
   const onBound = (bounds: readonly (readonly [Bound, number | null])[]) =>
     onState((before) => bounds.reduce((now, [name, value]) => withBound(now, name, value), before));
   return (
-    <search className="grid border-b-2 border-ink lg:grid-cols-[238px_minmax(0,1fr)_minmax(0,1fr)_292px] md:max-lg:grid-cols-2">
+    <search className="grid border-b-2 border-ink lg:grid-cols-[clamp(270px,23vw,330px)_minmax(0,1fr)_minmax(0,1fr)_292px] md:max-lg:grid-cols-2">
       <Designation {...props} />
       <RangeFilter measure="depth" {...{ state, system, onBound }} spread={spread.depth} />
       <RangeFilter measure="mass" {...{ state, system, onBound }} spread={spread.mass} />
@@ -64,28 +64,30 @@ function Designation({ state, onState, editions, suppliers, today }: SectionFilt
         value={state.shape}
         onChange={(shape) => onState((before) => ({ ...before, shape, table: '' }))}
       />
-      <select
-        aria-label="Section table"
-        className="input text-schedule!"
-        value={state.table}
-        onChange={(event) => {
-          const table = event.target.value;
-          onState((before) => ({ ...before, table }));
-        }}
-      >
-        <option value="">All tables</option>
-        {editions.map(({ table, name }) => (
-          <option key={table} value={table}>
-            {name}
-          </option>
-        ))}
-      </select>
-      <StockFilter
-        {...{ suppliers, today }}
-        stock={state.stock}
-        supplier={state.supplier}
-        onChange={(asked) => onState((before) => ({ ...before, ...asked }))}
-      />
+      <div className="grid gap-x-12 md:grid-cols-[minmax(0,1fr)_minmax(0,1.25fr)]">
+        <select
+          aria-label="Section table"
+          className="input text-schedule!"
+          value={state.table}
+          onChange={(event) => {
+            const table = event.target.value;
+            onState((before) => ({ ...before, table }));
+          }}
+        >
+          <option value="">All tables</option>
+          {editions.map(({ table, name }) => (
+            <option key={table} value={table}>
+              {name}
+            </option>
+          ))}
+        </select>
+        <StockFilter
+          {...{ suppliers, today }}
+          stock={state.stock}
+          supplier={state.supplier}
+          onChange={(asked) => onState((before) => ({ ...before, ...asked }))}
+        />
+      </div>
     </div>
   );
 }

@@ -17,7 +17,7 @@ const SHAPES = [
 /** Shapes as they are drawn; a second press takes the choice back. */
 export function ShapeFilter({ value, onChange }: ShapeFilterProps) {
   return (
-    <fieldset className="mt-10 grid grid-cols-4">
+    <fieldset className="mt-10 flex flex-wrap justify-between gap-x-2">
       <legend className="sr-only">Shape</legend>
       {SHAPES.map(({ shape, word, path }) => {
         const chosen = value === shape;
@@ -27,9 +27,9 @@ export function ShapeFilter({ value, onChange }: ShapeFilterProps) {
             type="button"
             aria-pressed={chosen}
             onClick={() => onChange(chosen ? '' : shape)}
-            className={`grid justify-items-center gap-3 pt-4 pb-13 text-note leading-14 max-md:min-h-44 ${chosen ? 'dimensioned font-semibold text-ink' : 'text-ink-2 hover:text-ink'}`}
+            className={`grid min-w-24 justify-items-center gap-3 pt-4 pb-13 text-note leading-14 max-md:min-h-44 ${chosen ? 'dimensioned font-semibold text-ink' : 'text-ink-2 hover:text-ink'}`}
           >
-            <svg width="28" height="32" viewBox="0 0 28 32" aria-hidden="true">
+            <svg width="25" height="29" viewBox="0 0 28 32" aria-hidden="true">
               <path
                 d={path}
                 fillRule="evenodd"

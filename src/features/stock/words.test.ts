@@ -29,7 +29,7 @@ test('what nobody said is left out of the line', () => {
 
 test('a choice of stock says which lists are old, and is a query', () => {
   expect(stockChoices(SUPPLIERS, TODAY).map(({ value, label }) => [label, stockQuery(value)])).toEqual([
-    ['In stock or not', {}],
+    ['Stocked or not', {}],
     ['In stock', { stock: '1' }],
     ['In stock: Near', { supplier: 'near' }],
     ['In stock: Far (122 days old)', { supplier: 'far' }],

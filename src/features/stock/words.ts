@@ -45,7 +45,7 @@ export function heldWords(
 export const ANYBODY = '*';
 
 export const stockChoices = (suppliers: readonly Supplier[], today: string) => [
-  { value: '', label: 'In stock or not' },
+  { value: '', label: 'Stocked or not' },
   { value: ANYBODY, label: 'In stock' },
   ...suppliers.map(({ slug, name, asOf }) => ({
     value: slug,

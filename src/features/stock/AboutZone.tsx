@@ -1,4 +1,4 @@
-import { type FormEvent, useState } from 'react';
+import { type SyntheticEvent, useState } from 'react';
 import { Button } from '@/components/ui/Button';
 import { Field, TextField } from '@/components/ui/Field';
 import { ZoneHeading } from '@/components/ui/ZoneHeading';
@@ -29,7 +29,7 @@ export function AboutZone({ list, today, act }: AboutZoneProps) {
       setSaid(null);
     },
   });
-  async function save(event: FormEvent) {
+  async function save(event: SyntheticEvent) {
     event.preventDefault();
     if (Object.keys(typed).length === 0) return setSaid({ words: 'Nothing has changed.', isWrong: false });
     if (!reading.ok) return;

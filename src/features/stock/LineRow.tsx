@@ -1,4 +1,4 @@
-import { type FormEvent, useState } from 'react';
+import { type SyntheticEvent, useState } from 'react';
 import { Button } from '@/components/ui/Button';
 import { ChoiceField, Field } from '@/components/ui/Field';
 import type { UnitSystemName } from '@/engine/quantity';
@@ -149,7 +149,7 @@ export function HoldingForm({ title, takesFocus = false, held, onKeep, onClose }
     autoComplete: 'off',
     onChange: ({ target }: { target: { value: string } }) => setTexts({ ...texts, [name]: target.value }),
   });
-  async function keep(event: FormEvent) {
+  async function keep(event: SyntheticEvent) {
     event.preventDefault();
     if (!('lengths_m' in read) || isBusy) return;
     setBusy(true);

@@ -110,66 +110,75 @@ type Slipped = {
   of: number;
 };
 
-function columnSlip(
-  { name, column, slip, ratio, agreeing, of }: Slipped,
-  store: RowStore,
-  found: ColumnFindings,
-  mapping: Mapping,
-): void {
-  const { index, heading } = column;
-  const times = Number(ratio.toPrecision(3));
-  const formula = `given over computed is ${times} in the median, and within 2 % of it in ${agreeing} of ${of} rows`;
-  if (slip) {
-    const { unit, factor, words, message } = slip;
-    const edit = { kind: 'set_column_unit', column: index, unit: unit ?? column.unit, factor } as const;
-    const fixes = [{ label: `Read the column in ${words}`, reach: 'column', edit } as const];
-    const base = {
-      rule: 20,
-      severity: 'error',
-      cause: 'column_slip',
-      column: index,
-      heading,
-      formula,
-    } as const;
-    const said = `The whole column: ${message.charAt(0).toLowerCase()}${message.slice(1)}`;
-    found.findings.push(
-      findingOf({ ...base, read: unitText(column.unit), expected: words, message: said, fixes }),
-    );
-    found.corrections.push({ column: index, factor: slip.correction, lines: null });
-    store.scale(column.field, slip.correction, null);
-    return;
-  }
-  if (name === 'mass') {
-    const value = Number((mapping.density * ratio).toPrecision(3));
-    const message = `The masses are those of a material of ${value} kg/m³, not of ${mapping.density}.`;
-    const fixes = [
-      { label: `Take ${value} kg/m³`, reach: 'file', edit: { kind: 'set_density', value } } as const,
-    ];
-    const base = { rule: 1, severity: 'warning', cause: 'density', column: index, heading, formula } as const;
-    found.findings.push(
-      findingOf({ ...base, read: String(mapping.density), expected: `${value} kg/m³`, message, fixes }),
-    );
-    found.assumed = { ...found.assumed, density: mapping.density * ratio };
-    return;
-  }
-  const message = `All rows give ${times} times what their sizes give. Look what the column holds, or leave it out.`;
-  const fixes = [
-    {
-      label: 'Leave the column out',
-      reach: 'column',
-      edit: { kind: 'leave_out_column', column: index },
-    } as const,
-  ];
-  const base = {
+/** What is said of a whole column, and what it is read by all the same. */
+function columnSlip(slipped: Slipped, store: RowStore, found: ColumnFindings, mapping: Mapping): void {
+  if (slipped.slip) unitOfColumn(slipped, slipped.slip, store, found);
+  else if (slipped.name === 'mass') densityOfMasses(slipped, found, mapping);
+  else unknownFactor(slipped, store, found);
+}
+
+const timesOf = (ratio: number): number => Number(ratio.toPrecision(3));
+const evidence = ({ ratio, agreeing, of }: Slipped): string =>
+  `given over computed is ${timesOf(ratio)} in the median, and within 2 % of it in ${agreeing} of ${of} rows`;
+const slipOf = (slipped: Slipped) =>
+  ({
     rule: 20,
     severity: 'error',
     cause: 'column_slip',
-    column: index,
-    heading,
-    formula,
-  } as const;
-  found.findings.push(findingOf({ ...base, read: `× ${times}`, expected: '× 1', message, fixes }));
-  found.corrections.push({ column: index, factor: 1 / ratio, lines: null });
+    column: slipped.column.index,
+    heading: slipped.column.heading,
+    formula: evidence(slipped),
+  }) as const;
+
+function unitOfColumn(slipped: Slipped, slip: UnitSlip, store: RowStore, found: ColumnFindings): void {
+  const { column } = slipped;
+  const { unit, factor, words, message, correction } = slip;
+  const edit = { kind: 'set_column_unit', column: column.index, unit: unit ?? column.unit, factor } as const;
+  const fixes = [{ label: `Read the column in ${words}`, reach: 'column', edit } as const];
+  const said = `The whole column: ${message.charAt(0).toLowerCase()}${message.slice(1)}`;
+  found.findings.push(
+    findingOf({ ...slipOf(slipped), read: unitText(column.unit), expected: words, message: said, fixes }),
+  );
+  found.corrections.push({ column: column.index, factor: correction, lines: null });
+  store.scale(column.field, correction, null);
+}
+
+function densityOfMasses(slipped: Slipped, found: ColumnFindings, mapping: Mapping): void {
+  const { index, heading } = slipped.column;
+  const density = mapping.density * slipped.ratio;
+  const value = timesOf(density);
+  const edit = { kind: 'set_density', value } as const;
+  found.findings.push(
+    findingOf({
+      rule: 1,
+      severity: 'warning',
+      cause: 'density',
+      column: index,
+      heading,
+      formula: evidence(slipped),
+      read: String(mapping.density),
+      expected: `${value} kg/m³`,
+      message: `The masses are those of a material of ${value} kg/m³, not of ${mapping.density}.`,
+      fixes: [{ label: `Take ${value} kg/m³`, reach: 'file', edit }],
+    }),
+  );
+  found.assumed = { ...found.assumed, density };
+}
+
+function unknownFactor(slipped: Slipped, store: RowStore, found: ColumnFindings): void {
+  const { column, ratio } = slipped;
+  const times = timesOf(ratio);
+  const edit = { kind: 'leave_out_column', column: column.index } as const;
+  found.findings.push(
+    findingOf({
+      ...slipOf(slipped),
+      read: `× ${times}`,
+      expected: '× 1',
+      message: `All rows give ${times} times what their sizes give. Look what the column holds, or leave it out.`,
+      fixes: [{ label: 'Leave the column out', reach: 'column', edit }],
+    }),
+  );
+  found.corrections.push({ column: column.index, factor: 1 / ratio, lines: null });
   store.scale(column.field, 1 / ratio, null);
 }
 

@@ -1,4 +1,4 @@
-import { type FormEvent, useRef, useState } from 'react';
+import { type SyntheticEvent, useRef, useState } from 'react';
 import { Button } from '@/components/ui/Button';
 import { Checkbox } from '@/components/ui/Choice';
 import { Field } from '@/components/ui/Field';
@@ -22,7 +22,7 @@ export function SaveForm(props: SaveFormProps) {
   const [shared, setShared] = useState(false);
   const { refusal, setRefusal, take } = useTaking(props);
   const taken = refusal?.isTaken ? ofName(saved.searches, name) : undefined;
-  const save = (event: FormEvent) => {
+  const save = (event: SyntheticEvent) => {
     event.preventDefault();
     take(() => saved.save({ name, query, shared }));
   };

@@ -1,4 +1,4 @@
-import { type FormEvent, type KeyboardEvent, useId, useState } from 'react';
+import { type KeyboardEvent, type SyntheticEvent, useId, useState } from 'react';
 import { Button } from '@/components/ui/Button';
 import { FieldNote } from '@/components/ui/Field';
 import { paths } from '@/paths';
@@ -130,7 +130,7 @@ interface RenameProps {
 function Rename({ name, error, onName, onClose }: RenameProps) {
   const id = useId();
   const [text, setText] = useState(name);
-  const submit = (event: FormEvent) => {
+  const submit = (event: SyntheticEvent) => {
     event.preventDefault();
     onName(text);
   };

@@ -72,6 +72,8 @@ async function readRegister(
   editions: readonly RegisterEdition[],
 ): Promise<Register> {
   const rows = new RegisterRows();
+  // So that 100,000 names are sorted in memory, which takes half as long.
+  await driverOf(tx)`select set_config('work_mem', '64MB', true)`;
   const found = driverOf(tx)<Row[]>`
     select revision_id as "revisionId", table_slug as "table", designation_key as key, shape, depth_mm, width_mm, mass_kg_m,
       area_cm2, i_major_cm4, i_minor_cm4, w_el_cm3, w_pl_cm3, j_cm4, iw_cm6,

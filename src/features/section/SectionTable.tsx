@@ -113,7 +113,7 @@ export function SectionTable(props: SectionTableProps) {
   };
   return (
     <div className="grid lg:grid-cols-[minmax(0,1fr)_62px]">
-      <div ref={view.scroller} className="section-scroll">
+      <div ref={view.scroller} className="section-scroll" data-sideways={view.isSideways || undefined}>
         <table
           id={id}
           // biome-ignore lint/a11y/noNoninteractiveElementToInteractiveRole: rows are chosen by keys, as in a grid

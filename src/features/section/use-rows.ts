@@ -1,5 +1,5 @@
 import { useVirtualizer } from '@tanstack/react-virtual';
-import { useEffect, useRef, useState } from 'react';
+import { type RefObject, useEffect, useRef, useState } from 'react';
 
 const ROW = { wide: 28, phone: 58 };
 const HEAD = 62;
@@ -19,10 +19,25 @@ function useIsPhone(): boolean {
   return isPhone;
 }
 
+/** Whether the schedule is wider than its place, so that it is scrolled sideways. */
+function useIsSideways(scroller: RefObject<HTMLElement | null>): boolean {
+  const [isSideways, setIsSideways] = useState(false);
+  useEffect(() => {
+    const element = scroller.current;
+    if (!element) return;
+    const look = () => setIsSideways(element.scrollWidth > element.clientWidth);
+    const observer = new ResizeObserver(look);
+    for (const one of [element, ...element.children]) observer.observe(one);
+    return () => observer.disconnect();
+  }, [scroller]);
+  return isSideways;
+}
+
 /** Which rows of a long schedule are drawn, and which of them are in view. */
 export function useRows(count: number) {
   const scroller = useRef<HTMLDivElement>(null);
   const isPhone = useIsPhone();
+  const isSideways = useIsSideways(scroller);
   const row = isPhone ? ROW.phone : ROW.wide;
   const head = isPhone ? 0 : HEAD;
   const virtualizer = useVirtualizer({
@@ -48,6 +63,7 @@ export function useRows(count: number) {
     first,
     size,
     height,
+    isSideways,
     show: (index: number) => virtualizer.scrollToIndex(index),
     showAround: (index: number) => virtualizer.scrollToIndex(index, { align: 'center' }),
     startAt: (index: number) => virtualizer.scrollToOffset(index * row),

@@ -55,6 +55,11 @@ test('what is made goes into one draft, is reviewed by another person, and is fo
     notes: ['2/IPE 300: Detail 14 of Q-2417', '3/IPE 300: Detail 15'],
   });
   await takeStep(librarian, draft.id, { step: 'submit' });
+  // Begun now, an edition would leave out what is in review.
+  await expect(addMadeSection(librarian, await made('5/IPE 300', '5'), 'x')).rejects.toMatchObject({
+    code: 'conflict',
+    message: expect.stringContaining('in review'),
+  });
   await takeStep(checker, draft.id, { step: 'issue' });
 
   const { item } = await findSection(engineer, { table: MADE.slug, designation: '2/IPE300' });
@@ -65,7 +70,11 @@ test('what is made goes into one draft, is reviewed by another person, and is fo
   const after = await withPractice(librarian, (tx) =>
     requireRevision(tx, librarian.practiceId, { ...key, number: next }),
   );
-  expect(after.body).toMatchObject({ rows: 3 });
+  expect(after.body).toMatchObject({
+    edition: String(next),
+    rows: 3,
+    notes: ['2/IPE 300: Detail 14 of Q-2417', '3/IPE 300: Detail 15', '4/IPE 300: Detail 16'],
+  });
   const later = await findSection(engineer, { table: MADE.slug, designation: '2/IPE300', edition: next });
   expect(later.item.dimensions_si).toMatchObject({
     parts: [

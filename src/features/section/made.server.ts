@@ -6,6 +6,7 @@ import { withPractice } from '@/db/tenancy';
 import type { User } from '@/features/account/account';
 import { requirePermission } from '@/features/account/permission';
 import { recordAudit } from '@/features/audit/audit.server';
+import { requireOnlyDraft } from '@/features/review/begin.server';
 import { findRevision } from '@/features/review/library.server';
 import { createDraft } from '@/features/review/review.server';
 import { type Actor, requireRevisionById, selectRevisions } from '@/features/review/rows.server';
@@ -32,16 +33,15 @@ export async function beamOf(user: User, designation: string): Promise<ChosenSec
   }
 }
 
-const metaOf = (edition: number, day: string): SectionTableMeta => ({
+const metaOf = (day: string, notes: readonly string[]): Omit<SectionTableMeta, 'edition'> => ({
   ...MADE,
   words: ['compound', 'own'],
   standard: 'Sections put together or measured in the practice',
   source: 'Computed from the outline, or values as supplied with their source; see the notes.',
-  edition: String(edition),
   catalogue_date: day,
   conventions: 'Major is the axis across the web or the upright side, through the centroid.',
   licence: 'Of the practice.',
-  notes: [],
+  notes,
   density_kg_m3: 7850,
   tube_standard: 'EN 10210',
 });
@@ -84,15 +84,20 @@ async function nextDraft(tx: Tx, actor: Actor): Promise<{ id: string; number: nu
   const made = await createDraft(tx, actor, {
     kind: 'section-table',
     ...MADE,
-    body: { ...metaOf((issued?.number ?? 0) + 1, new Date().toISOString().slice(0, 10)), rows: 0 },
+    body: { ...metaOf(new Date().toISOString().slice(0, 10), notesOf(issued?.body)), rows: 0 },
     schemaVersion: 1,
     changeNote: '',
     changeClass: 'improvement',
     consequence: 'cosmetic',
   });
+  await requireOnlyDraft(tx, actor.practiceId, made);
   if (issued) await copyRows(tx, actor.practiceId, issued.revisionId, made.revisionId);
   return { id: made.revisionId, number: made.number };
 }
+
+/** One a section: where each comes from. */
+const notesOf = (body: unknown): readonly string[] =>
+  (Object(body) as { notes?: readonly string[] }).notes ?? [];
 
 async function requireNewName(tx: Tx, practiceId: string, revisionId: string, { key, printed }: SectionRow) {
   const [taken] = await tx
@@ -115,8 +120,13 @@ async function sayRows(tx: Tx, actor: Actor, revisionId: string, added: string):
   const { practiceId, personId } = actor;
   const draft = await requireRevisionById(tx, practiceId, revisionId);
   const { count, sha256: rowsHash } = await storedRowsHash(tx, practiceId, revisionId);
-  const before = Object(draft.body) as { notes?: readonly string[] };
-  const body = { ...before, notes: [...(before.notes ?? []), added], rows: count, rows_sha256: rowsHash };
+  const body = {
+    ...Object(draft.body),
+    edition: String(draft.number),
+    notes: [...notesOf(draft.body), added],
+    rows: count,
+    rows_sha256: rowsHash,
+  };
   const isEditor = personId === draft.authorId || draft.editorIds.includes(personId);
   const sha256 = await sayEdition(tx, draft, body, {
     editorIds: isEditor ? draft.editorIds : [...draft.editorIds, personId],

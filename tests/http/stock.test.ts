@@ -366,6 +366,21 @@ describe('a CSV', () => {
     expect((await ask('GET', list, { token })).json).toMatchObject({ version: 1, lines: 0 });
   });
 
+  test('has the decimal mark that is said, whatever its cells look like', async () => {
+    const csv = 'designation,lengths (ft)\nIPE 300,"30,40"\nIPE 330,20.5';
+    const list = await begin();
+    const readAs = (mark: string) => ask('POST', `${list}/check?mark=${mark}`, { token, body: csv });
+    expect((await check(list, csv)).json).toMatchObject({ good: 2, read_as: { decimal_mark: '.' } });
+    expect((await readAs('none')).json.faults).toMatchObject([{ line: 2, code: 'ambiguous_number' }]);
+    expect((await readAs('dot')).status).toBe(422);
+    const kept = (mark: string) =>
+      ask('PUT', `${list}/lines?as_of=2026-11-26&mark=${mark}`, { token, body: csv, headers: match(1) });
+    expect((await kept('none')).json.errors).toMatchObject([{ pointer: '/lines/2/lengths' }]);
+    expect((await kept('comma')).status).toBe(200);
+    const { items } = (await ask('GET', `${list}/lines?q=IPE 300`, { token })).json;
+    expect(items).toMatchObject([{ lengths_m: [9.26592] }]); // 30.4 × 0.3048 m
+  });
+
   test.each([
     ['nothing', '', 'empty'],
     ['no text', new Uint8Array(200).fill(7), 'binary'],

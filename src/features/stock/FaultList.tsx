@@ -5,8 +5,8 @@ import { shownName } from '@/features/section/display';
 import { groupBy } from '@/lib/group-by';
 import type { StockField } from './cells';
 import type { StockRow } from './file';
+import { checkedRow, type LineFault, type Loaded } from './loaded';
 import { PRICE_BANDS } from './stock';
-import { checkedRow, type LineFault, type Loaded } from './use-load';
 
 const FIELD_WORDS: Readonly<Record<StockField, string>> = {
   designation: 'Designation',

@@ -7,9 +7,10 @@ import { DELIMITER_WORDS, ENCODING_WORDS, MARK_WORDS } from '@/features/imports/
 import { FaultList } from './FaultList';
 import { rowsCsv } from './file';
 import type { ListActions } from './LinesZone';
-import type { StockListView } from './stock';
+import { isTouched, type Loaded } from './loaded';
+import { markNameOf, type StockListView } from './stock';
 import { stockApi } from './stock.api';
-import { type Loaded, useLoad } from './use-load';
+import { useLoad } from './use-load';
 
 interface LoadZoneProps extends ListActions {
   readonly list: StockListView;
@@ -160,12 +161,12 @@ interface KeepingProps extends ListActions {
 /** As of which day, and the press that keeps it. */
 function Keeping({ load, loaded, list, today, act }: KeepingProps) {
   const [asOf, setAsOf] = useState('');
-  const { check, checked, rows, file } = loaded;
-  const isTouched = rows !== checked;
-  const mustCheck = check.fault_count > 0 || isTouched;
+  const { check, rows, file } = loaded;
+  const isChanged = isTouched(loaded);
+  const mustCheck = check.fault_count > 0 || isChanged;
   async function keep() {
-    const csv = rowsCsv(rows, file.as);
-    const refused = await act((version) => stockApi.replace(list.slug, version, { asOf, csv }));
+    const given = { asOf, csv: rowsCsv(rows, file.as), mark: markNameOf(file.as.mark) };
+    const refused = await act((version) => stockApi.replace(list.slug, version, given));
     if (refused === null) load.clear();
     load.say(refused);
   }
@@ -184,7 +185,7 @@ function Keeping({ load, loaded, list, today, act }: KeepingProps) {
       {mustCheck ? (
         <Button
           onClick={() => void load.again()}
-          {...(!isTouched && { reason: 'Put the lines right, or leave them out.' })}
+          {...(!isChanged && { reason: 'Put the lines right, or leave them out.' })}
         >
           {load.isBusy ? 'Checking' : 'Check again'}
         </Button>
@@ -196,9 +197,36 @@ function Keeping({ load, loaded, list, today, act }: KeepingProps) {
           Keep {counted(rows.length, 'line')} in place of {list.lines}
         </Button>
       )}
-      <Button tone="text" onClick={load.clear}>
+      <PutAway {...{ loaded }} onPutAway={load.clear} />
+    </div>
+  );
+}
+
+interface PutAwayProps {
+  readonly loaded: Loaded;
+  readonly onPutAway: () => void;
+}
+
+/** Makes room for another list; asks first where lines of this one were put right or left out. */
+function PutAway({ loaded: { rows, file }, onPutAway }: PutAwayProps) {
+  const [isAsked, setAsked] = useState(false);
+  const kept = new Set(rows);
+  const changed = file.rows.filter((row) => !kept.has(row)).length;
+  if (!isAsked)
+    return (
+      <Button tone="text" onClick={changed === 0 ? onPutAway : () => setAsked(true)}>
         Bring another list
       </Button>
-    </div>
+    );
+  return (
+    <p className="flex flex-wrap items-center gap-10">
+      <span>What you changed in {counted(changed, 'line')} goes with it.</span>
+      <Button tone="text" onClick={onPutAway}>
+        Put it away
+      </Button>
+      <Button tone="text" onClick={() => setAsked(false)}>
+        Go on with it
+      </Button>
+    </p>
   );
 }

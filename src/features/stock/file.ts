@@ -4,8 +4,8 @@ import { cellText } from '@/features/section/import/cells';
 import type { Delimiter, Encoding, Refusal } from '@/features/section/import/contract';
 import { encodingOf, refusalOf } from '@/features/section/import/encoding';
 import { type FileLine, LineReader } from '@/features/section/import/stream';
-import { lengthMarkOf, type ReadAs, readHolding, type StockField, type StockTexts } from './cells';
-import type { Holding } from './stock';
+import { lengthMarkOf, type ReadAs, type StockField, type StockTexts } from './cells';
+import { type Holding, MARKS, type MarkName } from './stock';
 
 export const MOST_BYTES = 5_000_000;
 export const MOST_LINES = 20_000;
@@ -105,10 +105,10 @@ const WRONG_HEADINGS =
   'No line heads the columns of a stock list. One column at least is called “designation”; the others are “table”, “stock lengths (m)”, “lead time (days)”, “price band” and “note”.';
 
 /**
- * The lines of a supplier's list, with the text of their cells. Encoding, delimiter and decimal mark are recognised.
- * Refuses what is no table, and what is too long.
+ * The lines of a supplier's list, with the text of their cells. Encoding and delimiter are recognised, and the decimal
+ * mark of the lengths where it is not given. Refuses what is no table, and what is too long.
  */
-export function readStockFile(bytes: Uint8Array): StockReading {
+export function readStockFile(bytes: Uint8Array, mark?: MarkName): StockReading {
   if (bytes.length === 0) return refused('empty', 'The file is empty. Choose the one with the list.');
   if (bytes.length > MOST_BYTES)
     return refused('too_large', 'The list is larger than 5 MB. Split it, or leave columns out.');
@@ -119,8 +119,15 @@ export function readStockFile(bytes: Uint8Array): StockReading {
   const encoding = read.kind === 'known' ? read.encoding : (read.choices[0] ?? 'utf-8');
   const delimiter = delimiterOf(new TextDecoder(encoding).decode(bytes.subarray(0, MOST_HEAD)));
   const lines = linesOf(bytes, encoding, delimiter);
-  return 'code' in lines ? { ok: false, refusal: lines } : readLines(lines, delimiter, encoding);
+  if ('code' in lines) return { ok: false, refusal: lines };
+  const reading = readLines(lines, delimiter, encoding);
+  return reading.ok && mark ? withMark(reading.file, MARKS[mark]) : reading;
 }
+
+const withMark = (file: StockFile, mark: ReadAs['mark']): StockReading => ({
+  ok: true,
+  file: { ...file, as: { ...file.as, mark } },
+});
 
 function linesOf(bytes: Uint8Array, encoding: Encoding, delimiter: Delimiter): FileLine[] | Refusal {
   const reader = new LineReader({ encoding, delimiter });
@@ -217,17 +224,22 @@ export const stockCsv = (lines: readonly Written[]): string =>
 
 const oneLine = (text: string): string => text.replaceAll(/\s+/g, ' ');
 
-/** Rows as such a CSV: what can be read in metres and days, what cannot as it stands. */
-export function rowsCsv(rows: readonly StockRow[], as: ReadAs): string {
-  const cells = rows.map(({ texts, spare }) => {
-    const held = readHolding(texts, as);
-    const { designation, table } = texts;
-    // One line for each row, by which what is found wrong is known again.
-    const written =
-      'lengths_m' in held
-        ? toCells({ ...held, designation: oneLine(designation), table: oneLine(table) })
-        : FIELDS.map((field) => oneLine(texts[field]));
-    return spare === '' ? written : [...written, oneLine(spare)];
-  });
-  return Papa.unparse([HEAD, ...cells]);
+/** Rows as they stand, one to a line, by which what is found wrong is known again. To be read with the file's mark. */
+export function rowsCsv(rows: readonly StockRow[], { lengthUnit, leadDays }: ReadAs): string {
+  const headings: Record<StockField, string> = {
+    designation: 'designation',
+    table: 'table',
+    lengths: `stock lengths (${lengthUnit})`,
+    lead_time: leadDays === 7 ? 'lead time (weeks)' : 'lead time (days)',
+    price_band: 'price band',
+    note: 'note',
+  };
+  const cells = rows.map(({ texts, spare }) => [
+    ...FIELDS.map((field) => oneLine(field === 'lengths' ? parted(texts[field]) : texts[field])),
+    ...(spare === '' ? [] : [oneLine(spare)]),
+  ]);
+  return Papa.unparse([FIELDS.map((field) => headings[field]), ...cells]);
 }
+
+/** A break stands between two lengths; a blank may stand inside one, as in 20' 6". */
+const parted = (lengths: string): string => lengths.replaceAll(/\s*\n\s*/g, '; ');

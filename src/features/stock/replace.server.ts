@@ -10,12 +10,18 @@ import { readStockFile, type StockFile } from './file';
 import { readLibrary, withNearest } from './library.server';
 import { record, requireList, requirePast, stepList, viewOf } from './list.server';
 import { keysOf, type Matched, type MatchedLine, matchRows } from './match';
-import type { StockCheck, StockListView } from './stock';
+import type { MarkName, StockCheck, StockListView } from './stock';
 
 const MOST_FAULTS = 500;
 
-function requireFile(bytes: Uint8Array): StockFile {
-  const reading = readStockFile(bytes);
+/** A CSV, and the decimal mark of its lengths where that is known already. */
+interface GivenCsv {
+  readonly bytes: Uint8Array;
+  readonly mark?: MarkName | undefined;
+}
+
+function requireFile({ bytes, mark }: GivenCsv): StockFile {
+  const reading = readStockFile(bytes, mark);
   if (reading.ok) return reading.file;
   throw invalid([{ pointer: '', ...reading.refusal }]);
 }
@@ -24,9 +30,9 @@ const matchFile = async (tx: Tx, practiceId: string, { rows, as }: StockFile): P
   matchRows(rows, as, await readLibrary(tx, practiceId, keysOf(rows)));
 
 /** What a CSV of lines comes to. Nothing is kept. */
-export function checkStock(actor: Actor, slug: string, bytes: Uint8Array): Promise<StockCheck> {
+export function checkStock(actor: Actor, slug: string, csv: GivenCsv): Promise<StockCheck> {
   requirePermission(actor, 'stock.edit');
-  const file = requireFile(bytes);
+  const file = requireFile(csv);
   return withPractice(actor, async (tx) => {
     await requireList(tx, actor.practiceId, slug);
     const { lines, faults } = await matchFile(tx, actor.practiceId, file);
@@ -55,11 +61,11 @@ export function replaceStock(
   actor: Actor,
   slug: string,
   version: number,
-  { asOf, bytes }: { readonly asOf: string; readonly bytes: Uint8Array },
+  { asOf, ...csv }: GivenCsv & { readonly asOf: string },
 ): Promise<StockListView> {
   requirePermission(actor, 'stock.edit');
   requirePast(asOf);
-  const file = requireFile(bytes);
+  const file = requireFile(csv);
   return withPractice(actor, async (tx) => {
     const { practiceId } = actor;
     const before = await viewOf(tx, practiceId, slug);

@@ -1,7 +1,15 @@
 import { z } from 'zod';
 import type { Fault } from '@/lib/app-error';
 import { paths } from '@/paths';
-import type { Holding, NewStockLine, StockCheck, StockLine, StockListChange, StockListView } from './stock';
+import type {
+  Holding,
+  MarkName,
+  NewStockLine,
+  StockCheck,
+  StockLine,
+  StockListChange,
+  StockListView,
+} from './stock';
 
 export type Acted<T> =
   | { readonly kind: 'done'; readonly value: T; readonly version: number }
@@ -62,6 +70,12 @@ export interface LinesPage {
   readonly total: number;
 }
 
+/** Lines, and what a comma between two digits is in their lengths. */
+export interface MarkedCsv {
+  readonly csv: string;
+  readonly mark: MarkName;
+}
+
 export const stockApi = {
   read: (slug: string) => ask<StockListView>({ method: 'GET', url: paths.api.stockList(slug) }),
   lines: (slug: string, query: Readonly<Record<string, string>>) =>
@@ -76,12 +90,16 @@ export const stockApi = {
     ask<StockLine>({ method: 'PATCH', url: paths.api.stockLine(slug, id), version, json: held }),
   removeLine: (slug: string, version: number, id: string) =>
     ask<null>({ method: 'DELETE', url: paths.api.stockLine(slug, id), version }),
-  check: (slug: string, csv: string) =>
-    ask<StockCheck>({ method: 'POST', url: paths.api.checkStock(slug), csv }),
-  replace: (slug: string, version: number, { asOf, csv }: { readonly asOf: string; readonly csv: string }) =>
+  check: (slug: string, { csv, mark }: MarkedCsv) =>
+    ask<StockCheck>({
+      method: 'POST',
+      url: `${paths.api.checkStock(slug)}?${new URLSearchParams({ mark })}`,
+      csv,
+    }),
+  replace: (slug: string, version: number, { asOf, csv, mark }: MarkedCsv & { readonly asOf: string }) =>
     ask<StockListView>({
       method: 'PUT',
-      url: `${paths.api.stockLines(slug)}?${new URLSearchParams({ as_of: asOf })}`,
+      url: `${paths.api.stockLines(slug)}?${new URLSearchParams({ as_of: asOf, mark })}`,
       version,
       csv,
     }),

@@ -3,7 +3,7 @@ import { designationKey } from '@/engine/section';
 import { BY_HAND, readBand, readHolding, readLeadTime, readLengths } from './cells';
 import { MOST_LINES, readStockFile, rowsCsv, type StockFile, stockCsv } from './file';
 import { type Library, matchRows, type NamedSection } from './match';
-import { daysBetween, isOld, slugOf } from './stock';
+import { daysBetween, isOld, markNameOf, slugOf } from './stock';
 
 const bytes = (text: string) => new TextEncoder().encode(text);
 
@@ -191,9 +191,43 @@ describe('a file', () => {
     expect(rows.map(({ texts }) => readHolding(texts, as))).toEqual([held, bare]);
   });
 
-  test('with a correction is written anew in metres, and a cell that cannot be read as it stands', () => {
-    const { rows, as } = fileOf('section;lengths (mm)\nIPE 300;7500,5\nIPE 330;long');
-    expect(rowsCsv(rows, as).split('\r\n').slice(1)).toEqual(['IPE 300,,7.5005,,,', 'IPE 330,,long,,,']);
+  /** Lengths of every line when the file is sent on, one cell of it mended. */
+  const sentOn = (text: string, mended: string, put: string) => {
+    const { rows, as } = fileOf(text);
+    const sent = rows.map((row) =>
+      row.texts.lengths === mended ? { ...row, texts: { ...row.texts, lengths: put } } : row,
+    );
+    const again = readStockFile(bytes(rowsCsv(sent, as)), markNameOf(as.mark));
+    if (!again.ok) throw new Error(again.refusal.message);
+    return again.file.rows.map(({ texts }) => {
+      const { ok, ...rest } = readLengths(texts.lengths, again.file.as);
+      return 'value' in rest ? rest.value : rest.fault.code;
+    });
+  };
+
+  test('whose comma may mean either is refused still when another line is mended', () => {
+    const text = 'designation,lengths\nIPE 300,"7,5"\nIPE 330,"6,5"';
+    expect(sentOn(text, '6,5', '6.5')).toEqual(['ambiguous_number', [6.5]]);
+  });
+
+  // A foot is 0.3048 m, by the yard of 1959.
+  test('in feet is in feet when it is sent on, with a fault or without', () => {
+    const text = 'designation,lengths (ft),band\nIPE 300,"30,40",Z\nIPE 330,20.5,B\nIPE 360,long,C';
+    expect(sentOn(text, 'long', '10')).toEqual([[9.144, 12.192], [6.2484], [3.048]]);
+    expect(sentOn('designation,lengths (ft)\nIPE 300,"30,40"\nIPE 330,x', 'x', '20.5')).toEqual([
+      'ambiguous_number',
+      [6.2484],
+    ]);
+  });
+
+  test('with decimal commas, breaks and weeks is the same when it is sent on', () => {
+    expect(sentOn('section;lengths (mm)\nIPE 300;7500,5\nIPE 330;long', 'long', '6000')).toEqual([
+      [7.5005],
+      [6],
+    ]);
+    expect(sentOn(`section,lengths\nIPE 300,"20' 6""\n40'"`, '', '')).toEqual([[6.2484, 12.192]]);
+    const { rows, as } = fileOf('section,lead time (weeks)\nIPE 300,2');
+    expect(fileOf(rowsCsv(rows, as)).as.leadDays).toBe(7);
   });
 });
 

@@ -95,6 +95,18 @@ export const NewStockLine = Holding.extend({
 });
 export type NewStockLine = z.output<typeof NewStockLine>;
 
+/** The decimal mark of a CSV's lengths, as a query names it. Null: a comma may be meant either way, and is refused. */
+export const MARKS = { none: null, point: '.', comma: ',' } as const;
+export type MarkName = keyof typeof MARKS;
+
+/** Of POST …/check and PUT …/lines: without a mark, the CSV's own is recognised. */
+export const readingQuery = { mark: z.enum(['none', 'point', 'comma']).optional() };
+
+export function markNameOf(mark: '.' | ',' | null): MarkName {
+  if (mark === null) return 'none';
+  return mark === '.' ? 'point' : 'comma';
+}
+
 const named = z.strictObject({ table: z.string(), designation: z.string() });
 
 /** What a CSV of lines comes to, with nothing kept of it. */

@@ -1,21 +1,9 @@
-import { useState } from 'react';
+import { useRef, useState } from 'react';
 import type { StockField } from './cells';
 import { MOST_BYTES, readStockFile, rowsCsv, type StockFile, type StockRow } from './file';
-import type { StockCheck } from './stock';
+import { type Loaded, mend, withCheck } from './loaded';
+import { markNameOf, type StockCheck } from './stock';
 import { stockApi } from './stock.api';
-
-export type LineFault = StockCheck['faults'][number];
-
-/** A list on its way in: its rows with what was put right, and what is still wrong with them. */
-export interface Loaded {
-  readonly name: string;
-  readonly file: StockFile;
-  readonly rows: readonly StockRow[];
-  readonly leftOut: number;
-  /** What was found wrong, and the rows as they were then. */
-  readonly check: StockCheck;
-  readonly checked: readonly StockRow[];
-}
 
 type Reading = ReturnType<typeof readStockFile> | { ok: false; refusal: { message: string } };
 
@@ -29,26 +17,32 @@ async function readContent(content: Blob): Promise<Reading> {
   return bytes ? readStockFile(new Uint8Array(bytes)) : refused('It cannot be read. Choose it again.');
 }
 
-/** The row that a fault was found in: rows are sent one to a line, under one line of headings. */
-export const checkedRow = ({ checked }: Loaded, { line }: LineFault): StockRow | undefined =>
-  checked[line - 2];
-
 export function useLoad(slug: string) {
   const [loaded, setLoaded] = useState<Loaded | null>(null);
   const [problem, setProblem] = useState<string | null>(null);
   const [isBusy, setBusy] = useState(false);
+  const isWorking = useRef(false); // known at once, before a second press
 
   const ask = async (file: StockFile, rows: readonly StockRow[]): Promise<StockCheck | null> => {
-    const acted = await stockApi.check(slug, rowsCsv(rows, file.as));
+    const csv = { csv: rowsCsv(rows, file.as), mark: markNameOf(file.as.mark) };
+    const acted = await stockApi.check(slug, csv);
     if (acted.kind === 'done') return acted.value;
     setProblem(acted.kind === 'refused' ? acted.message : 'The list changed. Load the page again.');
     return null;
   };
   const busily = async (work: () => Promise<void>) => {
+    if (isWorking.current) return;
+    isWorking.current = true;
     setBusy(true);
     setProblem(null);
     await work();
+    isWorking.current = false;
     setBusy(false);
+  };
+  /** Cells may be typed, or the list put away, while these rows are checked. */
+  const checkRows = async (file: StockFile, rows: readonly StockRow[]) => {
+    const check = await ask(file, rows);
+    if (check) setLoaded((now) => (now?.file === file ? withCheck(now, rows, check) : now));
   };
 
   return {
@@ -66,31 +60,19 @@ export function useLoad(slug: string) {
         if (check) setLoaded({ name, file, rows: file.rows, leftOut: 0, check, checked: file.rows });
       }),
     /** Puts cells of one line right. */
-    mend: (row: StockRow, texts: Partial<Record<StockField, string>>) => {
-      if (!loaded) return;
-      const mended = { ...row, texts: { ...row.texts, ...texts } };
-      const rows = loaded.rows.map((one) => (one.line === row.line ? mended : one));
-      setLoaded({ ...loaded, rows });
-    },
+    mend: ({ line }: StockRow, texts: Partial<Record<StockField, string>>) =>
+      setLoaded((now) => now && mend(now, line, texts)),
     again: () =>
       busily(async () => {
-        if (!loaded) return;
-        const { file, rows } = loaded;
-        const check = await ask(file, rows);
-        if (check) setLoaded({ ...loaded, check, checked: rows });
+        if (loaded) await checkRows(loaded.file, loaded.rows);
       }),
     leaveOut: (lines: ReadonlySet<number>) =>
       busily(async () => {
         if (!loaded) return;
-        const { file } = loaded;
         const rows = loaded.rows.filter(({ line }) => !lines.has(line));
-        const leftOut = loaded.leftOut + loaded.rows.length - rows.length;
-        if (rows.length === 0) {
-          setLoaded(null);
-          return setProblem('No line is left. Bring another list.');
-        }
-        const check = await ask(file, rows);
-        if (check) setLoaded({ ...loaded, rows, leftOut, check, checked: rows });
+        if (rows.length > 0) return checkRows(loaded.file, rows);
+        setLoaded(null);
+        setProblem('No line is left. Bring another list.');
       }),
   };
 }

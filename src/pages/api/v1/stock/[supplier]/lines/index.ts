@@ -2,7 +2,7 @@ import { z } from 'zod';
 import { MOST_BYTES } from '@/features/stock/file';
 import { addStockLine, readStockLines } from '@/features/stock/lines.server';
 import { replaceStock } from '@/features/stock/replace.server';
-import { NewStockLine, StockLine, StockListView } from '@/features/stock/stock';
+import { NewStockLine, readingQuery, StockLine, StockListView } from '@/features/stock/stock';
 import { readBytes } from '@/http/body';
 import { answer, endpoint } from '@/http/endpoint';
 import { etag, ifMatch } from '@/http/etag';
@@ -36,14 +36,14 @@ export const PUT = endpoint(
   {
     summary: 'Replaces all lines of a stock list by a CSV',
     description:
-      'The body is the CSV, 5 MB and 20,000 lines at most: columns designation, table, stock lengths (m), lead time (days), price band and note, of which only the first is needed. as_of is the day that the stock was true of. One line with a fault refuses all; POST …/check lists them first.',
-    query: z.strictObject({ as_of: z.iso.date() }),
+      'The body is the CSV, 5 MB and 20,000 lines at most: columns designation, table, stock lengths (m), lead time (days), price band and note, of which only the first is needed. as_of is the day that the stock was true of, mark as POST …/check takes it. One line with a fault refuses all; POST …/check lists them first.',
+    query: z.strictObject({ as_of: z.iso.date(), ...readingQuery }),
     answer: StockListView,
   },
   async (context, { user, query }) => {
     const version = ifMatch(context);
     const bytes = await readBytes(context.request, MOST_BYTES);
-    const given = { asOf: query.as_of, bytes };
+    const given = { asOf: query.as_of, mark: query.mark, bytes };
     const view = await replaceStock(user, context.params['supplier'] ?? '', version, given);
     return answer(view, { headers: { ETag: etag(view.version) } });
   },

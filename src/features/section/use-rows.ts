@@ -44,7 +44,7 @@ export function useRows(count: number) {
     count,
     getScrollElement: () => scroller.current,
     estimateSize: () => row,
-    overscan: 12,
+    overscan: 6,
     scrollPaddingEnd: head,
     initialRect: FIRST_PAINT,
   });

@@ -6,8 +6,8 @@ import type { SectionShape } from '@/engine/section';
 import type { SectionField } from '../query';
 import { Register, type RegisterEdition, RegisterRows } from './register';
 
-/** Sections that are held in memory, of all practices; with their names some 700 bytes each. */
-const MOST = 1_000_000;
+/** Sections that are held in memory, of all practices: 700 bytes each with their names. A practice that has more is held alone. */
+const MOST = 500_000;
 /** Rows that are taken in between other work: a few milliseconds. */
 const AT_ONCE = 2000;
 

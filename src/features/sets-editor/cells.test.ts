@@ -82,6 +82,26 @@ describe('a pasted table', () => {
     ]);
   });
 
+  test.each([
+    ['of decimals with commas', '0,7\n1\n0,5', ['0,7', '1', '0,5']],
+    ['of quantities with commas', '355,5 N/mm2\n275 N/mm2', ['355,5 N/mm2', '275 N/mm2']],
+    ['of words with commas', 'Roofs, with snow\nOffices', ['Roofs, with snow', 'Offices']],
+    ['in quotes', '"0,7"\n"0,5"', ['0,7', '0,5']],
+  ])('of one column %s stays one', (_, text, cells) => {
+    expect(pastedRows(text)).toEqual(cells.map((cell) => [cell]));
+  });
+
+  test('keeps what stands in quotes together', () => {
+    expect(pastedRows('"C24, solid",24\n"5"" plank",16')).toEqual([
+      ['C24, solid', '24'],
+      ['5" plank', '16'],
+    ]);
+    expect(pastedRows('"two\nlines"\t1\n"a;b"\t2')).toEqual([
+      ['two lines', '1'],
+      ['a;b', '2'],
+    ]);
+  });
+
   test('is none where it is one cell’s text', () => {
     expect(['1.5', 'Roofs, with snow', 'Roofs\n'].map(isTable)).toEqual([false, false, false]);
     expect(isTable('1\t2')).toBe(true);

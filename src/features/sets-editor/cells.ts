@@ -1,4 +1,5 @@
 /** Cells of a set's tables: what each shows of the document, and the edit that its text comes to. */
+import Papa from 'papaparse';
 import type { SetFactor } from '@/engine/combination';
 import { type DimensionName, readQuantity, toUnit } from '@/engine/quantity';
 import { applyEdit, type Edit, keysOf, listAt, type Pointer, valueAt } from '@/features/author/edit';
@@ -94,10 +95,22 @@ export function cellEdit(row: Pointer, text: string, column: Column): Edit {
 
 /** What a spreadsheet or a CSV file gives: rows of cells, by tabs, or by semicolons or commas where there are none. */
 export function pastedRows(text: string): readonly (readonly string[])[] {
-  const lines = text.replaceAll('\r\n', '\n').replace(/\n+$/, '').split('\n');
-  const between = text.includes('\t') ? '\t' : text.includes(';') ? ';' : ',';
-  return lines.map((line) => line.split(between).map((cell) => cell.trim().replace(/^"(.*)"$/, '$1')));
+  const table = text.replaceAll('\r\n', '\n').replace(/\n+$/, '');
+  const { data } = Papa.parse<string[]>(table, { delimiter: delimiterOf(table), newline: '\n' });
+  return data.map((cells) => cells.map((cell) => cell.trim().replaceAll(/\s*\n\s*/g, ' ')));
 }
+
+/** A tab, which is in none of its lines, where a text is one column of decimals with commas or of words. */
+function delimiterOf(table: string): string {
+  const bare = table.replaceAll(/"[^"]*"/g, '""');
+  if (bare.includes('\t')) return '\t';
+  if (bare.includes(';')) return ';';
+  const isOneColumn = /, /.test(bare) || bare.split('\n').every((line) => DECIMAL.test(line.trim()));
+  return isOneColumn ? '\t' : ',';
+}
+
+/** "0,7", "355,5 N/mm2": nothing, or one number with a comma at most. */
+const DECIMAL = /^(?:[+-]?\d+(?:,\d+)?(?:\s[^,]*)?)?$/;
 
 /** Whether a pasted text is a table, and not one cell's. */
 export const isTable = (text: string): boolean => /[\t\n]/.test(text.replace(/\n+$/, ''));

@@ -5,7 +5,7 @@ import { valueAt } from '@/features/author/edit';
 import { CheckAt, ChecksAt, TextAt, useReadOnly } from '@/features/author/fields';
 import { useDraft, useFaultAt, useListAt, useSnapshot } from '@/features/author/use-editor';
 import { MOST_CATEGORIES } from '@/features/combination/combination';
-import type { Column } from './cells';
+import { type Column, indexOf } from './cells';
 import { newCategory, VARIABLE } from './combinations';
 import { Grid, type GridRow, RowActions } from './Grid';
 import { useRows } from './use-rows';
@@ -105,7 +105,6 @@ function More({ group, row, count }: MoreProps) {
   const store = useDraft();
   const act = useRows();
   const { at } = row;
-  const index = Number(at.slice(at.lastIndexOf('/') + 1));
   const others = LOAD_GROUPS.filter((one) => one !== group).map((one) => ({
     value: one,
     label: LOAD_GROUP_NAMES[one],
@@ -122,7 +121,7 @@ function More({ group, row, count }: MoreProps) {
       <CheckAt at={`${at}/from_memory`}>From memory: to be compared with the print</CheckAt>
       <RowActions
         row={row}
-        index={index}
+        index={indexOf(at)}
         count={count}
         onDuplicate={() => act.duplicate(at)}
         onMove={(to) => act.move(at, to)}

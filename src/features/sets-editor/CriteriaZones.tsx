@@ -2,11 +2,12 @@ import { Button } from '@/components/ui/Button';
 import { ChoiceField, FieldNote } from '@/components/ui/Field';
 import { LIMIT_NAMES } from '@/engine/check';
 import { LIMIT_STATES, LOAD_GROUP_NAMES, LOAD_GROUPS } from '@/engine/combination';
+import type { UnitSystemName } from '@/engine/quantity';
 import { ChecksAt, ChoiceAt, LinesAt, LongTextAt, useReadOnly } from '@/features/author/fields';
 import { useDraft, useFaultAt, useFaultIn, useListAt, useSnapshot } from '@/features/author/use-editor';
-import type { Column } from './cells';
-import { VARIABLE } from './combinations';
-import { newLimit, referredKey, referredTo, setKey } from './criteria';
+import { type Column, indexOf } from './cells';
+import { GROUP_CHOICES } from './combinations';
+import { capColumn, chosenGroups, newLimit, referredKey, referredTo, setKey } from './criteria';
 import { Grid, type GridRow, RowActions } from './Grid';
 import { TitleFields } from './HeadZone';
 import { SourceFields } from './PatternZone';
@@ -43,6 +44,7 @@ export function ReferenceZone({ data: { sets } }: ZoneProps) {
   const fault = useFaultIn('/combinations');
   const key = useSnapshot(({ history }) => referredKey(history.document));
   const set = useSnapshot(({ history }) => referredTo(history.document, sets))?.document;
+  const groups = useSnapshot(({ history }) => (set ? chosenGroups(history.document, set).join(' ') : ''));
   const choices = sets.map(({ slug, revision, document }) => ({
     value: setKey(slug, revision),
     label: `${document.reference}, revision ${revision}: ${document.name}`,
@@ -75,13 +77,13 @@ export function ReferenceZone({ data: { sets } }: ZoneProps) {
       </div>
       {set && (
         <div className="grid gap-12 md:grid-cols-3">
-          {VARIABLE.filter((group) => (set.categories[group]?.length ?? 0) > 1).map((group) => (
+          {LOAD_GROUPS.filter((group) => groups.includes(group)).map((group) => (
             <ChoiceAt
               key={group}
               at={`/categories/${group}`}
               label={`${LOAD_GROUP_NAMES[group]} as`}
               choices={[
-                { value: '', label: `The usual: ${set.categories[group]?.[0]?.name ?? ''}` },
+                { value: '', label: `The usual: ${set.categories[group]?.[0]?.name ?? 'none'}` },
                 ...(set.categories[group] ?? []).map(({ id, name }) => ({ value: id, label: name })),
               ]}
             />
@@ -132,21 +134,16 @@ const WIDTHS = {
   cap: '6.5rem',
 };
 
-const columnsOf = (choices: readonly { value: string; label: string }[], unit: string): readonly Column[] => [
+const columnsOf = (
+  choices: readonly { value: string; label: string }[],
+  system: UnitSystemName,
+): readonly Column[] => [
   { key: 'name', label: 'Limit', kind: 'text' },
   { key: 'combination/id', label: 'Combination', kind: 'choice', choices },
   { key: 'span_ratio', label: 'Span over', kind: 'number' },
   { key: 'overhang_factor', label: 'Overhang times', kind: 'number' },
   { key: 'overhang_ratio', label: 'Overhang over', kind: 'number' },
-  {
-    key: 'cap',
-    label: 'At most',
-    kind: 'si',
-    dimension: 'length',
-    unit,
-    isOptional: true,
-    placeholder: 'no cap',
-  },
+  capColumn(system),
 ];
 
 /** The limits of deflection as a table: of which combination, span and overhang over what, and a cap. */
@@ -156,7 +153,6 @@ export function DeflectionZone({ data: { sets, system } }: ZoneProps) {
   const fault = useFaultAt('/deflection');
   const { length: count } = useListAt('/deflection');
   const set = useSnapshot(({ history }) => referredTo(history.document, sets))?.document;
-  const unit = system === 'us' ? 'in' : 'mm';
   const choices = (set?.service ?? []).map(({ id, name }) => ({ value: id, label: name }));
   const rows = Array.from({ length: count }, (_, index) => ({
     at: `/deflection/${index}`,
@@ -169,8 +165,8 @@ export function DeflectionZone({ data: { sets, system } }: ZoneProps) {
       ) : (
         <Grid
           caption="The lower of span over ratio and the cap governs; an overhang is its length times a factor over its ratio"
-          columns={columnsOf(choices, unit)}
-          heads={headsIn(unit)}
+          columns={columnsOf(choices, system)}
+          heads={headsIn(capColumn(system).unit)}
           widths={WIDTHS}
           leastWidth="46rem"
           rows={rows}
@@ -213,24 +209,21 @@ const headsIn = (unit: string) => ({
   ),
 });
 
-const GROUPS = LOAD_GROUPS.map((value) => ({ value, label: `${value}, ${LOAD_GROUP_NAMES[value]}` }));
-
 function LimitMore({ row, count }: { readonly row: GridRow; readonly count: number }) {
   const act = useRows();
   const { at } = row;
-  const index = Number(at.slice(at.lastIndexOf('/') + 1));
   return (
     <>
       <ChecksAt
         at={`${at}/combination/groups`}
         label="Of these groups of it alone; of all where none is ticked"
-        choices={GROUPS}
+        choices={GROUP_CHOICES}
         isOptional
       />
       <SourceFields at={`${at}/source`} />
       <RowActions
         row={row}
-        index={index}
+        index={indexOf(at)}
         count={count}
         onDuplicate={() => act.duplicate(at)}
         onMove={(to) => act.move(at, to)}

@@ -10,6 +10,7 @@ import { readDecimal } from '@/lib/decimal';
 import {
   exchange,
   fromPartialFactors,
+  GROUP_CHOICES,
   type PartialFactors,
   partialFactorsOf,
   VARIABLE,
@@ -38,11 +39,6 @@ export function FactorTools() {
     </div>
   );
 }
-
-const GROUP_CHOICES = LOAD_GROUPS.map((group) => ({
-  value: group,
-  label: `${group}, ${LOAD_GROUP_NAMES[group]}`,
-}));
 
 /** What is wrong with a number that a tool needs; nothing while it is empty. */
 const numberFault = (text: string): string | undefined =>

@@ -4,10 +4,10 @@ import { limitLines, referredTo, strengthNames } from './criteria';
 import type { ZoneProps } from './page';
 
 /** What members are held to by the draft: each limit with its combination in numbers, and the combinations of strength. */
-export function LimitPreview({ data: { sets } }: ZoneProps) {
+export function LimitPreview({ data: { sets, system } }: ZoneProps) {
   const document = useDeferredValue(useSnapshot(({ history }) => history.document));
   const set = referredTo(document, sets)?.document;
-  const lines = useMemo(() => limitLines(document, set), [document, set]);
+  const lines = useMemo(() => limitLines(document, set, system), [document, set, system]);
   if (!set)
     return <p className="text-ink-2">Choose an issued combination set: its combinations stand here then.</p>;
   return (

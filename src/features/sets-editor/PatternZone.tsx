@@ -1,5 +1,5 @@
 import { Button } from '@/components/ui/Button';
-import { LOAD_GROUP_NAMES, LOAD_GROUPS } from '@/engine/combination';
+import { LOAD_GROUPS } from '@/engine/combination';
 import { listAt, type Pointer, textAt, valueAt } from '@/features/author/edit';
 import { CheckAt, ChoiceAt, LongTextAt, TextAt } from '@/features/author/fields';
 import { Row } from '@/features/author/Part';
@@ -7,8 +7,7 @@ import { PartList } from '@/features/author/PartList';
 import { useAdd } from '@/features/author/use-add';
 import { useTextAt } from '@/features/author/use-editor';
 import type { Written } from '@/features/review/draft';
-
-const CHOICES = LOAD_GROUPS.map((value) => ({ value, label: `${value}, ${LOAD_GROUP_NAMES[value]}` }));
+import { GROUP_CHOICES } from './combinations';
 
 /** Whether the loads of a group are put where they are adverse alone, or stand on the whole length. */
 export function PatternZone() {
@@ -42,7 +41,7 @@ export function PatternZone() {
 }
 
 const nameOf = (group: string): string =>
-  CHOICES.find(({ value }) => value === group)?.label ?? 'No group yet';
+  GROUP_CHOICES.find(({ value }) => value === group)?.label ?? 'No group yet';
 
 /** Of the first group that nothing is said of yet. */
 function newPattern(document: Written, publication: string) {
@@ -58,7 +57,7 @@ function newPattern(document: Written, publication: string) {
 function PatternFields({ at }: { readonly at: Pointer }) {
   return (
     <>
-      <ChoiceAt at={`${at}/group`} label="Group" choices={CHOICES} />
+      <ChoiceAt at={`${at}/group`} label="Group" choices={GROUP_CHOICES} />
       <CheckAt at={`${at}/where_adverse`}>On each span and overhang only where it is adverse</CheckAt>
       <LongTextAt at={`${at}/basis`} label="Why" rows={2} />
       <SourceFields at={`${at}/source`} />

@@ -38,6 +38,20 @@ describe('the others leading', () => {
     expect(isWhole(edited(two, edits))).toBe(true);
   });
 
+  test('say in “when” which leads, from memory until somebody compares them', () => {
+    const when = 'Where imposed loads lead.';
+    const compared = edited(two, [
+      { do: 'set', at: '/strength/1/when', value: when },
+      { do: 'set', at: '/strength/1/from_memory', value: false },
+    ]);
+    const made = listAt(edited(compared, leadingVariants(compared, '/strength/1')), '/strength');
+    expect(made.slice(1, 4)).toMatchObject([
+      { when, from_memory: false },
+      { when: 'Where snow loads lead.', from_memory: true },
+      { when: 'Where wind loads lead.', from_memory: true },
+    ]);
+  });
+
   test('are none where the list has them, nothing accompanies by ψ0, or nothing leads', () => {
     expect(leadingVariants(written, '/strength/1')).toEqual([]);
     expect(leadingVariants(written, '/strength/6')).toEqual([]);

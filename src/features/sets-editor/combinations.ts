@@ -15,6 +15,11 @@ import { factorsOf, type List } from './preview';
 
 export const VARIABLE: readonly LoadGroup[] = LOAD_GROUPS.filter((group) => group !== 'G');
 
+export const GROUP_CHOICES = LOAD_GROUPS.map((value) => ({
+  value,
+  label: `${value}, ${LOAD_GROUP_NAMES[value]}`,
+}));
+
 type Factors = SetCombination['factors'];
 
 export const newCombination = (document: Written, list: List) => ({
@@ -67,7 +72,7 @@ export function leadingVariants(document: Written, at: Pointer): Edit[] {
     if (!isAccompanying(other) || typeof led !== 'number') return [];
     const swapped = { ...factors, [group]: other.factor, [leading]: { factor: led, by: 'psi0' } };
     if (known.some((one) => sameValue(one, swapped))) return [];
-    return [{ ...row, ...calledBy(row, leading, group), factors: swapped }];
+    return [{ ...row, ...calledBy(row, leading, group), factors: swapped, from_memory: true }];
   });
   return inserted(document, list, indexOf(at) + 1, variants);
 }
@@ -79,6 +84,7 @@ function calledBy(row: unknown, from: LoadGroup, to: LoadGroup) {
   const letter = to.toLowerCase();
   return {
     name: name.includes(was) ? name.replace(was, is) : `${name}${name === '' ? '' : ', '}${is} leading`,
+    when: textAt(row, '/when').replace(was, is),
     id: textAt(row, '/id').replace(new RegExp(`-(${from.toLowerCase()}|${was})(?=-|$)`), `-${letter}`),
   };
 }

@@ -6,7 +6,15 @@ import type { Written } from '@/features/review/draft';
 import { SET_READERS } from '@/features/review/read-set';
 import { shippedSet } from '../../../tests/support/criteria';
 import old from '../../../tests/support/criteria-schema-1.json';
-import { type IssuedSet, limitLines, newLimit, referredFaults, referredTo, withoutUnknown } from './criteria';
+import {
+  chosenGroups,
+  type IssuedSet,
+  limitLines,
+  newLimit,
+  referredFaults,
+  referredTo,
+  withoutUnknown,
+} from './criteria';
 
 const written: Written = JSON.parse(readFileSync('data/criteria/steel-elastic-en.json', 'utf8'));
 const issued = (document: CombinationSet, revision = 1): IssuedSet => ({
@@ -46,12 +54,20 @@ describe('the set that criteria refer to', () => {
   });
 });
 
+test('a category is chosen where there is a choice, and where one that is gone must be taken out', () => {
+  const set = shippedSet('asce-7-16-strength');
+  const without = { ...set, categories: {} };
+  expect(chosenGroups(written, shippedSet('en-1990-6-10'))).toEqual(expect.arrayContaining(['Q', 'S']));
+  expect(chosenGroups({}, without)).toEqual([]);
+  expect(chosenGroups({ categories: { Q: 'z', G: 'z' } }, without)).toEqual(['G', 'Q']);
+});
+
 describe('limits as they are used', () => {
   const set = sets[0]?.document;
 
   // EN 1990, 6.14b without G by Q and S: Q + ψ0 S, ψ0 of snow to 1000 m 0.5, from memory.
   test('have their combination in numbers, of their groups alone', () => {
-    expect(limitLines(written, set)[0]).toEqual({
+    expect(limitLines(written, set, 'metric')[0]).toEqual({
       at: '/deflection/0',
       name: 'Imposed load',
       combination: 'Q + 0.5 S',
@@ -60,17 +76,25 @@ describe('limits as they are used', () => {
     });
   });
 
+  test.each([
+    ['metric', 0.025, 'L/360, a/180 of overhangs, at most 25 mm'],
+    ['us', 0.01905, 'L/360, a/180 of overhangs, at most 0.75 in'],
+  ] as const)('say their cap in %s units', (system, value, limits) => {
+    const capped = edited({ do: 'set', at: '/deflection/0/cap', value });
+    expect(limitLines(capped, set, system)[0]?.limits).toBe(limits);
+  });
+
   // Table A1.1, from memory: storage has ψ0 = 1.0; the second limit is snow leading.
   test('follow the categories that the criteria choose', () => {
     const storage = edited({ do: 'set', at: '/categories/Q', value: 'e' });
-    expect(limitLines(storage, set)[1]?.combination).toBe('Q + S');
+    expect(limitLines(storage, set, 'metric')[1]?.combination).toBe('Q + S');
   });
 
   test('say what is missing', () => {
     const unknown = edited({ do: 'set', at: '/deflection/0/combination/id', value: 'none' });
-    expect(limitLines(unknown, set)[0]?.combination).toBeNull();
+    expect(limitLines(unknown, set, 'metric')[0]?.combination).toBeNull();
     expect(
-      limitLines({ deflection: [{ overhang_factor: 2, overhang_ratio: 360 }] }, undefined)[0],
+      limitLines({ deflection: [{ overhang_factor: 2, overhang_ratio: 360 }] }, undefined, 'metric')[0],
     ).toMatchObject({
       combination: null,
       limits: '2a/360 of overhangs',

@@ -4,13 +4,16 @@ import {
   type Categories,
   type CombinationSet,
   LOAD_GROUPS,
+  type LoadGroup,
   serviceOf,
   strengthOf,
 } from '@/engine/combination';
+import type { UnitSystemName } from '@/engine/quantity';
 import { type Edit, listAt, type Pointer, textAt, valueAt } from '@/features/author/edit';
 import type { Written } from '@/features/review/draft';
 import type { Fault } from '@/lib/app-error';
 import { pointer } from '@/lib/pointer';
+import { type Column, cellText } from './cells';
 
 /** The issued revision of a combination set. */
 export interface IssuedSet {
@@ -50,6 +53,13 @@ export function referredFaults(document: Written, sets: readonly IssuedSet[]): F
   }));
 }
 
+/** Groups of which a category may be chosen, and those of which one is that the set does not have: to be put right. */
+export const chosenGroups = (document: Written, set: CombinationSet): LoadGroup[] =>
+  LOAD_GROUPS.filter(
+    (group) =>
+      (set.categories[group]?.length ?? 0) > 1 || valueAt(document, `/categories/${group}`) !== undefined,
+  );
+
 /** The categories that the criteria say, of groups alone. */
 const categoriesIn = (document: Written): Categories =>
   Object.fromEntries(
@@ -59,7 +69,7 @@ const categoriesIn = (document: Written): Categories =>
     }),
   );
 
-/** One limit as members are held to it: "Q + 0.5 S: span/360, overhang/180". */
+/** One limit as members are held to it: "Q + 0.5 S: L/360, a/180 of overhangs, at most 25 mm". */
 interface LimitLine {
   readonly at: Pointer;
   readonly name: string;
@@ -69,7 +79,11 @@ interface LimitLine {
   readonly source: string;
 }
 
-export function limitLines(document: Written, set: CombinationSet | undefined): LimitLine[] {
+export function limitLines(
+  document: Written,
+  set: CombinationSet | undefined,
+  system: UnitSystemName,
+): LimitLine[] {
   const chosen = categoriesIn(document);
   return listAt(document, '/deflection').map((one, index) => {
     const groups = listAt(one, '/combination/groups').flatMap((name) =>
@@ -81,7 +95,7 @@ export function limitLines(document: Written, set: CombinationSet | undefined): 
       at: `/deflection/${index}`,
       name: textAt(one, '/name'),
       combination: found === undefined ? null : found.name || 'nothing acts',
-      limits: limitsText(one),
+      limits: limitsText(one, system),
       source: [textAt(one, '/source/publication'), textAt(one, '/source/clause')]
         .filter((text) => text !== '')
         .join(', '),
@@ -89,22 +103,35 @@ export function limitLines(document: Written, set: CombinationSet | undefined): 
   });
 }
 
-/** "L/360, 2a/360 of overhangs": of a limit whose numbers can be read. */
-function limitsText(one: unknown): string {
-  const [ratio, factor, overhang] = ['/span_ratio', '/overhang_factor', '/overhang_ratio'].map((key) =>
-    valueAt(one, key),
+/** "L/360, 2a/360 of overhangs, at most 25 mm": of a limit whose numbers can be read. */
+function limitsText(one: unknown, system: UnitSystemName): string {
+  const [ratio, factor, overhang, cap] = ['/span_ratio', '/overhang_factor', '/overhang_ratio', '/cap'].map(
+    (key) => valueAt(one, key),
   );
   const span = typeof ratio === 'number' ? [`L/${ratio}`] : [];
   const isWhole = typeof factor === 'number' && typeof overhang === 'number';
-  return [...span, ...(isWhole ? [`${factor === 1 ? '' : factor}a/${overhang} of overhangs`] : [])].join(
-    ', ',
-  );
+  const column = capColumn(system);
+  const most = typeof cap === 'number' ? [`at most ${cellText(cap, column)} ${column.unit}`] : [];
+  const overhangs = isWhole ? [`${factor === 1 ? '' : factor}a/${overhang} of overhangs`] : [];
+  return [...span, ...overhangs, ...most].join(', ');
 }
+
+/** The cap of a limit, in the unit that it is typed and said in. */
+export const capColumn = (system: UnitSystemName) =>
+  ({
+    key: 'cap',
+    label: 'At most',
+    kind: 'si',
+    dimension: 'length',
+    unit: system === 'us' ? 'in' : 'mm',
+    isOptional: true,
+    placeholder: 'no cap',
+  }) as const satisfies Column;
 
 export const strengthNames = (document: Written, set: CombinationSet): string[] =>
   strengthOf(set, categoriesIn(document)).map(({ name }) => name);
 
-/** A further limit, with the source and the ratios of the last. */
+/** A further limit, of the combination and with the source of the last; its ratios are for its author to say. */
 export function newLimit(document: Written): object {
   const last = listAt(document, '/deflection').at(-1);
   const source = valueAt(last, '/source') ?? { publication: '', clause: '', from_memory: true };

@@ -40,6 +40,22 @@ test('of a category that is not the usual one it is said of which', () => {
   });
 });
 
+// As above; storage stands with its ψ0 = 1.0 in what accompanies, and there is none of it where imposed loads lead.
+test('of a category that is gone the combinations are said that it reduced', () => {
+  const storage = (written['categories'] as { Q: { id: string }[] }).Q.findIndex(({ id }) => id === 'e');
+  const found = changes({ do: 'remove', at: `/categories/Q/${storage}` });
+  expect(found[0]).toEqual({
+    list: '/strength',
+    name: '6.10, snow leading',
+    clause: expect.any(String),
+    of: 'imposed as E: storage, a category that is gone',
+    before: '1.35 G + 1.5 Q + 1.5 S + 0.9 W',
+    after: null,
+  });
+  expect(found.map(({ name }) => name)).not.toContain('6.10, imposed leading');
+  expect(new Set(found.map(({ of }) => of)).size).toBe(1);
+});
+
 test('a combination that came, and one that went', () => {
   const value = {
     id: 'new',

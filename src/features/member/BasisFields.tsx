@@ -3,7 +3,7 @@ import { Checkbox } from '@/components/ui/Choice';
 import { ChoiceField, Field } from '@/components/ui/Field';
 import { choiceOf } from '@/features/material/choice';
 import type { FieldFaults } from '@/features/template/faults';
-import { type BasisData, basisWords, isBasisAmiss, materialChoices, patternedOf } from './basis';
+import { type BasisData, basisWords, isBasisAmiss, materialChoices, patternWords } from './basis';
 import { CombinationFields } from './CombinationFields';
 import type { MemberInputs } from './evaluate';
 import { type CriteriaChoice, type Draft, judgedBy, type WorkspaceData } from './workspace';
@@ -148,16 +148,14 @@ function Patterns({
   judged,
   onChange,
 }: Pick<BasisFieldsProps, 'draft' | 'onChange'> & { readonly judged: MemberInputs['criteria'] }) {
-  const patterned = patternedOf(judged);
-  if (patterned.length === 0) return null;
+  const words = patternWords(draft, judged);
+  if (!words) return null;
   return (
     <>
       <Checkbox checked={draft.patterns} onChange={(event) => onChange({ patterns: event.target.checked })}>
-        {patterned.map(({ letter }) => letter).join(' and ')} only on the spans where adverse
+        {words.label}
       </Checkbox>
-      <p className="text-note text-ink-2">
-        {patterned.map(({ letter, basis }) => `${letter}: ${basis}.`).join(' ')}
-      </p>
+      <p className="text-note text-ink-2">{words.note}</p>
       {!draft.patterns && (
         <Field
           label="On the whole length because"

@@ -3,8 +3,8 @@ import { describe, expect, test } from 'vitest';
 import { criteriaDocument } from '@/engine/check';
 import { MATERIALS } from '@/engine/section';
 import { shippedSet } from '../../../tests/support/criteria';
-import { type BasisData, basisWords, isBasisAmiss } from './basis';
-import type { Draft } from './workspace';
+import { type BasisData, basisWords, isBasisAmiss, patternWords } from './basis';
+import { type Draft, judgedBy } from './workspace';
 
 const named = (slug: string, name: string) => ({ slug, name, reference: slug, revision: 1 });
 const steel = criteriaDocument.parse(JSON.parse(readFileSync('data/criteria/steel-elastic-en.json', 'utf8')));
@@ -49,6 +49,21 @@ describe('the basis in a line', () => {
 
   test('says that there are no criteria', () => {
     expect(basisWords({ ...draft, criteria: '' }, data).criteria).toBe('No criteria chosen');
+  });
+});
+
+describe('the choice to take loads only where adverse', () => {
+  const judged = judgedBy(draft, data);
+
+  test('names the loads of the criteria', () => {
+    expect(patternWords(draft, judged)?.label).toBe('Q and S only on the spans where adverse');
+  });
+
+  test('is left out where no load is, but not while it asks for a reason', () => {
+    const none = judged && { ...judged, patterns: [] };
+    expect(patternWords(draft, none)).toBeNull();
+    expect(patternWords(draft, null)).toBeNull();
+    expect(patternWords({ patterns: false }, none)?.label).toBe('Loads only on the spans where adverse');
   });
 });
 

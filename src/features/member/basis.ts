@@ -38,6 +38,21 @@ export const patternedOf = (judged: MemberInputs['criteria']) =>
     .filter(({ where_adverse }) => where_adverse)
     .map(({ group, basis }) => ({ letter: judged?.letters?.[group] ?? group, basis }));
 
+/** The choice to take loads only where they are adverse; null where no load is, and none was taken otherwise. */
+export function patternWords({ patterns }: Pick<Draft, 'patterns'>, judged: MemberInputs['criteria']) {
+  const patterned = patternedOf(judged);
+  if (patterned.length > 0)
+    return {
+      label: `${letters(patterned)} only on the spans where adverse`,
+      note: patterned.map(({ letter, basis }) => `${letter}: ${basis}.`).join(' '),
+    };
+  if (patterns) return null;
+  return {
+    label: 'Loads only on the spans where adverse',
+    note: 'With these criteria every load stands on the whole length anyway: tick it, or keep the reason.',
+  };
+}
+
 const letters = (groups: readonly { letter: string }[]): string =>
   groups.map(({ letter }) => letter).join(' and ');
 

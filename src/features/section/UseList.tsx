@@ -16,7 +16,13 @@ const AGED: Readonly<Partial<Record<RevisionState, string>>> = {
 /** The members made of a section, in the jobs that the reader may see. */
 export function UseList({ uses: { items, total }, onward }: UseListProps) {
   if (items.length === 0)
-    return <p className="text-ink-2">No member of a job that you may see is made of this section.</p>;
+    return (
+      <p className="text-ink-2">
+        {total === 0
+          ? 'No member of a job that you may see is made of this section.'
+          : `The list ends before this page: ${total} in all.`}
+      </p>
+    );
   return (
     <>
       <table className="schedule">

@@ -1,4 +1,4 @@
-import { and, desc, eq, inArray, ne, sql } from 'drizzle-orm';
+import { and, count, desc, eq, inArray, ne } from 'drizzle-orm';
 import type { Tx } from '@/db/client';
 import { job } from '@/db/schema/job';
 import { revision } from '@/db/schema/library';
@@ -102,7 +102,15 @@ async function usesOf(
   { table, designation }: SectionKey,
   from: number,
 ): Promise<SectionUses> {
-  const found = await tx
+  const isUse = and(
+    eq(member.practiceId, practiceId),
+    eq(section.tableSlug, table),
+    eq(section.designationKey, designationKey(designation)),
+    ne(member.status, 'removed'),
+  );
+  const ofMember = and(eq(section.practiceId, member.practiceId), eq(section.id, member.sectionId));
+  const ofJob = and(eq(job.practiceId, member.practiceId), eq(job.id, member.jobId));
+  const items = await tx
     .select({
       job: job.number,
       jobName: job.name,
@@ -110,27 +118,25 @@ async function usesOf(
       title: member.title,
       edition: revision.number,
       state: revision.state,
-      total: sql<number>`count(*) over ()::int`,
     })
     .from(member)
-    .innerJoin(section, and(eq(section.practiceId, member.practiceId), eq(section.id, member.sectionId)))
+    .innerJoin(section, ofMember)
     .innerJoin(
       revision,
       and(eq(revision.practiceId, section.practiceId), eq(revision.id, section.revisionId)),
     )
-    .innerJoin(job, and(eq(job.practiceId, member.practiceId), eq(job.id, member.jobId)))
-    .where(
-      and(
-        eq(member.practiceId, practiceId),
-        eq(section.tableSlug, table),
-        eq(section.designationKey, designationKey(designation)),
-        ne(member.status, 'removed'),
-      ),
-    )
+    .innerJoin(job, ofJob)
+    .where(isUse)
     .orderBy(desc(member.changedAt), member.id)
     .limit(USES_SHOWN)
     .offset(from);
-  const total = found[0]?.total ?? 0;
+  const [counted] = await tx
+    .select({ total: count() })
+    .from(member)
+    .innerJoin(section, ofMember)
+    .innerJoin(job, ofJob)
+    .where(isUse);
+  const total = counted?.total ?? 0;
   const next = from + USES_SHOWN;
-  return { items: found.map(({ total: _, ...use }) => use), total, next: next < total ? next : null };
+  return { items, total, next: next < total ? next : null };
 }

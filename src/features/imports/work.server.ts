@@ -1,11 +1,12 @@
 /** The worker's part: the file is read once as a whole, then its rows are checked, and later written into an edition. */
+import type { Readable } from 'node:stream';
 import { setImmediate } from 'node:timers/promises';
 import { and, eq, isNull, sql } from 'drizzle-orm';
 import type { Tx } from '@/db/client';
 import { sectionImport } from '@/db/schema/import';
 import { withoutPractice, withPractice } from '@/db/tenancy';
 import { recordAudit } from '@/features/audit/audit.server';
-import { asWorker, eachPractice, takeTurn } from '@/features/proof/run.server';
+import { asWorker, eachPractice, type Run, takeTurn } from '@/features/proof/run.server';
 import { fillEdition } from '@/features/section/edition.server';
 import { addFindings, emptyReport, RowCheck, reportOf, Survey } from '@/features/section/import';
 import type { CheckBatch, CheckedRow, FileFacts, Finding, Refusal } from '@/features/section/import/contract';
@@ -26,6 +27,8 @@ const SAY_EVERY = 700;
 /** What a turn holds in memory: the file as far as it is read, and the check of its rows. */
 interface Turn {
   readonly row: ImportRow;
+  /** Holds a connection to the store until it is read to its end or destroyed. */
+  readonly content: Readable;
   readonly pieces: AsyncIterator<Uint8Array>;
   readonly check: RowCheck;
   /** Rows that are kept. */
@@ -34,43 +37,46 @@ interface Turn {
   ahead: Promise<Batch>;
 }
 
-export function runImport(task: RunTask, attempt: Attempt): Promise<void> {
-  const { practiceId, runId } = task;
-  const worker = asWorker(practiceId);
-  let turn: Turn | null | undefined;
-  return takeTurn(
-    task,
-    {
-      chunk: async () => {
-        turn ??= await begin(practiceId, runId);
-        if (!turn) return 'over';
-        const batch = await turn.ahead;
-        const { row, done } = turn;
-        if (!batch.isLast) turn.ahead = readAhead(turn, batch.rowsDone);
-        const kept = await withPractice(worker, async (tx) => {
-          const now = await holdFree(tx, practiceId, runId);
-          if (!now || now.state !== row.state || now.version !== row.version || now.done !== done)
-            return false;
-          if (now.state === 'checking') await keepFindings(tx, now, batch);
-          else await keepRows(tx, now, batch);
-          await publish(tx, practiceId, null, { type: 'progress', id: runId });
-          return true;
-        });
-        if (kept && batch.isLast && row.state === 'committing') await refreshStatistics();
-        turn.done = batch.rowsDone;
-        return kept && !batch.isLast ? 'more' : 'over';
-      },
-      again: () => withPractice(worker, (tx) => send(tx, 'run-import', task)),
-      fail: (error) => withPractice(worker, (tx) => fail(tx, task, error)),
+export async function runImport(task: RunTask, attempt: Attempt): Promise<void> {
+  const worker = asWorker(task.practiceId);
+  const held: { turn?: Turn | null } = {};
+  const run: Run = {
+    chunk: async () => {
+      held.turn ??= await begin(task);
+      return held.turn ? keepNext(task, held.turn) : 'over';
     },
-    attempt,
-  );
+    again: () => withPractice(worker, (tx) => send(tx, 'run-import', task)),
+    fail: (error) => withPractice(worker, (tx) => fail(tx, task, error)),
+  };
+  try {
+    await takeTurn(task, run, attempt);
+  } finally {
+    held.turn?.content.destroy();
+  }
+}
+
+/** Keeps the batch that is read, while the one after it is read ahead. */
+async function keepNext({ practiceId, runId }: RunTask, turn: Turn): Promise<'more' | 'over'> {
+  const batch = await turn.ahead;
+  const { row, done } = turn;
+  if (!batch.isLast) turn.ahead = readAhead(turn, batch.rowsDone);
+  const kept = await withPractice(asWorker(practiceId), async (tx) => {
+    const now = await holdFree(tx, practiceId, runId);
+    if (!now || now.state !== row.state || now.version !== row.version || now.done !== done) return false;
+    if (now.state === 'checking') await keepFindings(tx, now, batch);
+    else await keepRows(tx, now, batch);
+    await publish(tx, practiceId, null, { type: 'progress', id: runId });
+    return true;
+  });
+  if (kept && batch.isLast && row.state === 'committing') await refreshStatistics();
+  turn.done = batch.rowsDone;
+  return kept && !batch.isLast ? 'more' : 'over';
 }
 
 /** Null where there is nothing to do. What has to be known of the whole file is found first. */
-async function begin(practiceId: string, id: string): Promise<Turn | null> {
+async function begin({ practiceId, runId }: RunTask): Promise<Turn | null> {
   const worker = asWorker(practiceId);
-  const read = () => withPractice(worker, (tx) => findImport(tx, practiceId, id));
+  const read = () => withPractice(worker, (tx) => findImport(tx, practiceId, runId));
   let row = await read();
   if (row.state === 'checking' && row.facts === null) {
     if (!(await survey(row))) return null;
@@ -79,28 +85,27 @@ async function begin(practiceId: string, id: string): Promise<Turn | null> {
   if ((row.state !== 'checking' && row.state !== 'committing') || row.facts === null) return null;
   const isSettled = row.state === 'committing';
   const check = new RowCheck(row.mapping, row.edits, row.facts, { fromRow: row.done, isSettled });
-  const reading = { row, pieces: await open(row), check };
-  return { ...reading, done: row.done, ahead: readAhead(reading, row.done) };
+  const content = await open(row);
+  const pieces = content[Symbol.asyncIterator]();
+  return { row, content, pieces, check, done: row.done, ahead: readAhead({ pieces, check }, row.done) };
 }
 
-async function open({ fileKey, id }: ImportRow): Promise<AsyncIterator<Uint8Array>> {
+async function open({ fileKey, id }: ImportRow): Promise<Readable> {
   const content = await requireStore().read(fileKey);
   if (!content) throw new Error(`The file of import ${id} is not in the store`);
-  return content[Symbol.asyncIterator]();
+  return content;
 }
 
 /** The first reading. False where somebody has changed or ended the import meanwhile, or the file is refused. */
 async function survey(row: ImportRow): Promise<boolean> {
   const reading = new Survey(row.mapping, row.edits);
-  const pieces = await open(row);
+  const content: AsyncIterable<Uint8Array> = await open(row);
   let bytes = 0;
   let said = Date.now();
-  for (;;) {
-    const { value, done } = await pieces.next();
-    if (done) break;
-    const refusal = reading.push(value);
+  for await (const piece of content) {
+    const refusal = reading.push(piece);
     if (refusal) return refuse(row, refusal);
-    bytes += value.byteLength;
+    bytes += piece.byteLength;
     await setImmediate(); // the worker has other things to do as well
     if (Date.now() - said < SAY_EVERY) continue;
     said = Date.now();

@@ -1,4 +1,4 @@
-import { beforeAll, describe, expect, test } from 'vitest';
+import { beforeAll, describe, expect, test, vi } from 'vitest';
 import { createApiToken } from '@/features/account/token.server';
 import { MOST_SAVED } from '@/features/section/saved/saved';
 import { ask } from '../support/app';
@@ -103,6 +103,42 @@ describe('a search that is saved', () => {
     expect((await remove(json.id)).status).toBe(404);
     expect((await change(json.id, { name: 'Gone' })).status).toBe(404);
     expect((await remove('no-identifier')).status).toBe(404);
+  });
+
+  /** Begins both while the row and its owner's turn are held, and lets them go once both wait. */
+  const atOnce = (id: string, work: () => ReturnType<typeof remove>[]) =>
+    owner.sql
+      .begin(async (sql) => {
+        await sql`select pg_advisory_xact_lock(hashtext(${people.engineer.personId}))`;
+        await sql`select id from saved_search where id = ${id} for update`;
+        const both = work();
+        await vi.waitFor(async () => {
+          const [found] = await owner.sql`select count(*)::int as n from pg_stat_activity
+            where datname = current_database() and wait_event_type = 'Lock'`;
+          expect(found?.['n']).toBe(both.length);
+        });
+        return { both };
+      })
+      .then(({ both }) => Promise.all(both));
+
+  test('keeps both of two changes at once', async () => {
+    const { json } = await save({ name: 'Changed twice' });
+    const both = await atOnce(json.id, () => [
+      change(json.id, { name: 'Changed by two' }),
+      change(json.id, { query: '?mass_max=77' }),
+    ]);
+    expect(both.map(({ status }) => status)).toEqual([200, 200]);
+    const { items } = await list();
+    expect(items).toContainEqual({ ...json, name: 'Changed by two', query: '?mass_max=77' });
+  });
+
+  test('is deleted once by two at once, and recorded once', async () => {
+    const { json } = await save({ shared: true, name: 'Deleted twice' }, 'librarian');
+    const both = await atOnce(json.id, () => [remove(json.id, 'librarian'), remove(json.id, 'librarian')]);
+    expect(both.map(({ status }) => status).sort()).toEqual([204, 404]);
+    const [found] = await owner.sql`select count(*)::int as n from audit_event
+      where action = 'search.remove' and subject_id = ${json.id}`;
+    expect(found?.['n']).toBe(1);
   });
 
   test('stands in the record with each of its steps', async () => {

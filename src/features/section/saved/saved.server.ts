@@ -47,6 +47,16 @@ async function findSaved(tx: Tx, user: User, id: string) {
   return found;
 }
 
+/** Kept from whoever else would change or delete it, until this is done. */
+async function holdSaved(tx: Tx, user: User, id: string) {
+  await tx
+    .select({ id: savedSearch.id })
+    .from(savedSearch)
+    .where(and(eq(savedSearch.practiceId, user.practiceId), eq(savedSearch.id, id)))
+    .for('update');
+  return findSaved(tx, user, id);
+}
+
 export function saveSearch(user: User, body: NewSavedSearch): Promise<SavedSearchView> {
   requirePermission(user, 'search.save');
   if (body.shared) requirePermission(user, 'search.share');
@@ -80,10 +90,10 @@ export function changeSavedSearch(
   change: ChangeSavedSearch,
 ): Promise<SavedSearchView> {
   return withPractice(user, async (tx) => {
-    const { id: _, personId, by, ...before } = await findSaved(tx, user, id);
+    await oneAtATime(tx, user);
+    const { id: _, personId, by, ...before } = await holdSaved(tx, user, id);
     requirePermission(user, 'search.change', { authorId: personId });
     if (change.shared) requirePermission(user, 'search.share');
-    await oneAtATime(tx, user);
     const after = {
       name: change.name ?? before.name,
       query: change.query === undefined ? before.query : readQuery(change.query),
@@ -104,7 +114,7 @@ export function changeSavedSearch(
 
 export function removeSavedSearch(user: User, id: string): Promise<void> {
   return withPractice(user, async (tx) => {
-    const { id: _, personId, by: _by, ...before } = await findSaved(tx, user, id);
+    const { id: _, personId, by: _by, ...before } = await holdSaved(tx, user, id);
     requirePermission(user, 'search.remove', { authorId: personId });
     await tx.delete(savedSearch).where(eq(savedSearch.id, id));
     await recordAudit(tx, user, { action: 'search.remove', subjectKind: 'search', subjectId: id, before });

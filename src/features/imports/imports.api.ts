@@ -74,6 +74,10 @@ export async function readProgress(id: string): Promise<ImportProgress | null> {
   return response?.ok ? response.json() : null;
 }
 
+/** A file's type as browsers say it; some know none for a CSV file or a PDF. */
+const typeOf = ({ type, name }: File): string =>
+  type || (/\.pdf$/i.test(name) ? 'application/pdf' : 'text/csv');
+
 interface Sending {
   readonly method: 'POST' | 'PUT';
   readonly url: string;
@@ -96,7 +100,7 @@ function sendFile(file: File, { method, url, version, onProgress, signal }: Send
     request.onabort = () => resolve(refused('The upload was stopped. Nothing was kept.'));
     signal.addEventListener('abort', () => request.abort());
     const form = new FormData();
-    form.set('file', file);
+    form.set('file', new File([file], file.name, { type: typeOf(file) }));
     request.send(form);
   });
 }

@@ -1,4 +1,4 @@
-import { describe, expect, test } from 'vitest';
+import { describe, expect, test, vi } from 'vitest';
 import { takeFile } from './upload';
 
 const TYPE = 'multipart/form-data; boundary=x';
@@ -83,6 +83,19 @@ describe('the file of a form', () => {
       status,
       message: expect.stringMatching(words),
     });
+  });
+
+  test('is not read at all where it is announced as larger', async () => {
+    const sent = (bytes: number) => {
+      const headers = { 'content-type': TYPE, 'content-length': String(bytes) };
+      return new Request('http://localhost/', { method: 'POST', body: `${FILE}--x--`, headers });
+    };
+    const MB = 1024 * 1024;
+    const take = vi.fn(async () => 'taken');
+    const request = sent(51 * MB + 1);
+    await expect(takeFile({ request }, take)).rejects.toMatchObject({ status: 413 });
+    expect([take.mock.calls, request.bodyUsed]).toEqual([[], false]);
+    expect(await takeFile({ request: sent(51 * MB) }, take)).toBe('taken');
   });
 
   test('is read no further than 51 MB, and no further once it is refused', async () => {

@@ -23,6 +23,7 @@ export async function takeFile<T>(
   { request }: Pick<APIContext, 'request'>,
   take: (file: ArrivingFile) => Promise<T>,
 ): Promise<T> {
+  if (Number(request.headers.get('content-length')) > MOST) throw tooLarge();
   const form = openForm(request.headers.get('content-type') ?? '');
   const whole = pipeline(counted(request.body ?? []), form).catch((error: unknown) => {
     throw asRefusal(error);
@@ -36,6 +37,8 @@ export async function takeFile<T>(
     form.destroy();
   }
 }
+
+const tooLarge = () => new AppError('too_large', 'The file is larger than 50 MB, the most that is taken.');
 
 const ASKED = `Send one, as the part “${FIELD}”, with its name.`;
 
@@ -58,7 +61,7 @@ async function* counted(chunks: AsyncIterable<Uint8Array> | readonly []) {
   let bytes = 0;
   for await (const chunk of chunks) {
     bytes += chunk.byteLength;
-    if (bytes > MOST) throw new AppError('too_large', 'The form is larger than its file may be: 50 MB.');
+    if (bytes > MOST) throw tooLarge();
     yield chunk;
   }
 }

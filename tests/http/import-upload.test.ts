@@ -138,6 +138,21 @@ describe('a file that is refused', () => {
     expect([kept, await traces()]).toEqual([[], before]);
   }, 60_000);
 
+  test('because it is announced as larger is not begun', async () => {
+    const before = await traces();
+    const put = vi.spyOn(requireStore(), 'put');
+    try {
+      const headers = {
+        'content-type': 'multipart/form-data; boundary=x',
+        'content-length': String(60 * 1024 * 1024),
+      };
+      const { status } = await ask('POST', ADDRESS, { cookie, body: '--x', headers });
+      expect([status, put.mock.calls, await traces()]).toEqual([413, [], before]);
+    } finally {
+      put.mockRestore();
+    }
+  });
+
   test('because the sender went away leaves nothing either', async () => {
     const before = await traces();
     const kept = await keptBy(async () => {
@@ -171,4 +186,26 @@ test('an import takes the document that it was made from, which a program’s fi
   const [other] = await foundPractice(['librarian']);
   const elsewhere = importer(await signInAs(other.email, PASSWORD), other.practiceId);
   expect((await elsewhere.act('GET', id, '/source', undefined)).status).toBe(404);
+});
+
+test('a document that another takes the place of is kept no longer', async () => {
+  const { id, changed_at } = (await desk.upload(csvOf(CLEAN))).json;
+  const bring = async (content: string) => {
+    const body = formOf(content, 'page.pdf', 'application/pdf');
+    const sent = await ask('PUT', `${ADDRESS}/${id}/source`, {
+      cookie,
+      body,
+      headers: { 'if-match': '"1"' },
+    });
+    expect(sent.status).toBe(200);
+    return sent.json;
+  };
+  const kept = await keptBy(async () => {
+    const first = await bring('%PDF-1.4');
+    expect(Date.parse(first.changed_at)).toBeGreaterThan(Date.parse(changed_at));
+    await bring('%PDF-1.7');
+  });
+  const [row] = await owner.sql`select source_key from section_import where id = ${id}`;
+  expect(kept).toEqual([row?.['source_key']]);
+  expect((await desk.act('GET', id, '/source', undefined)).json).toBe('%PDF-1.7');
 });

@@ -1,6 +1,6 @@
 import { createHash } from 'node:crypto';
 import { Readable } from 'node:stream';
-import { and, desc, eq } from 'drizzle-orm';
+import { and, desc, eq, sql } from 'drizzle-orm';
 import type { Tx } from '@/db/client';
 import { importMapping, sectionImport } from '@/db/schema/import';
 import { withPractice } from '@/db/tenancy';
@@ -96,12 +96,13 @@ export async function takeSource(
   const key = `${actor.practiceId}/sources/${crypto.randomUUID()}`;
   const { sha256 } = await keep(key, upload, () => null);
   try {
-    return await withPractice(actor, async (tx) => {
-      requireState(await holdVersion(tx, actor, id, version));
+    const { view, replaced } = await withPractice(actor, async (tx) => {
+      const row = await holdVersion(tx, actor, id, version);
+      requireState(row);
       const name = fileName(upload.name);
       await tx
         .update(sectionImport)
-        .set({ sourceKey: key, sourceName: name, sourceSha256: sha256 })
+        .set({ sourceKey: key, sourceName: name, sourceSha256: sha256, changedAt: sql`now()` })
         .where(ofImport(actor.practiceId, id));
       await recordAudit(tx, actor, {
         action: 'import.source',
@@ -109,8 +110,10 @@ export async function takeSource(
         subjectId: id,
         after: { file: name, sha256 },
       });
-      return toView(tx, actor, id);
+      return { view: await toView(tx, actor, id), replaced: row.sourceKey };
     });
+    if (replaced !== null) await drop(replaced);
+    return view;
   } catch (error) {
     await drop(key);
     throw error;
@@ -192,7 +195,7 @@ export async function recogniseAs(
 const drop = (key: string): Promise<void> =>
   requireStore()
     .remove(key)
-    .catch((error: unknown) => log.error('an upload that was refused is left in the store', { key, error }));
+    .catch((error: unknown) => log.error('a file that nobody needs is left in the store', { key, error }));
 
 /** SHA-256 of the headings, by which a supplier's next file is known again. */
 export const headingsHash = ({ columns }: Mapping): string =>

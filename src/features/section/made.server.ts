@@ -33,7 +33,7 @@ export async function beamOf(user: User, designation: string): Promise<ChosenSec
   }
 }
 
-const metaOf = (day: string, notes: readonly string[]): Omit<SectionTableMeta, 'edition'> => ({
+const metaOf = (day: string, notes: string[]): Omit<SectionTableMeta, 'edition'> => ({
   ...MADE,
   words: ['compound', 'own'],
   standard: 'Sections put together or measured in the practice',
@@ -96,8 +96,7 @@ async function nextDraft(tx: Tx, actor: Actor): Promise<{ id: string; number: nu
 }
 
 /** One a section: where each comes from. */
-const notesOf = (body: unknown): readonly string[] =>
-  (Object(body) as { notes?: readonly string[] }).notes ?? [];
+const notesOf = (body: unknown): string[] => (Object(body) as { notes?: string[] }).notes ?? [];
 
 async function requireNewName(tx: Tx, practiceId: string, revisionId: string, { key, printed }: SectionRow) {
   const [taken] = await tx

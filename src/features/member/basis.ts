@@ -49,7 +49,7 @@ export function patternWords({ patterns }: Pick<Draft, 'patterns'>, judged: Memb
   if (patterns) return null;
   return {
     label: 'Loads only on the spans where adverse',
-    note: 'With these criteria every load stands on the whole length anyway: tick it, or keep the reason.',
+    note: 'No load of the chosen criteria acts only where adverse: tick it, or keep the reason.',
   };
 }
 

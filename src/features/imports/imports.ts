@@ -44,9 +44,19 @@ export interface FixRecord {
 
 const text = (most: number) => z.string().trim().min(1, 'Fill this in.').max(most);
 
+/** What stands beside the section tables in addresses. */
+const RESERVED_TABLES: readonly string[] = ['stock', 'build', 'searches', 'spread'];
+
 /** What a librarian says of the table that a file holds. */
 export const About = z.strictObject({
-  table: z.string().max(LONGEST_SLUG).regex(SLUG, 'Use small letters, digits and hyphens.'),
+  table: z
+    .string()
+    .max(LONGEST_SLUG)
+    .regex(SLUG, 'Use small letters, digits and hyphens.')
+    .refine(
+      (slug) => !RESERVED_TABLES.includes(slug),
+      'This is the address of another page. Choose another for the section table.',
+    ),
   /** Of a new table; a table that is there keeps its own. */
   name: text(120),
   reference: text(40),

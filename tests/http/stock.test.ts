@@ -176,6 +176,26 @@ describe('a stock list', () => {
     expect(again).toMatchObject({ status: 409, json: { errors: [{ pointer: '/supplier', code: 'taken' }] } });
   });
 
+  test('is not renamed to what another is called; a list at the address of a name is named', async () => {
+    const [one, other] = [await begin(), await begin()];
+    const name = `SUPPLIER ${made} under Tést`;
+    const rename = (list: string, supplier: string, version: number) =>
+      ask('PATCH', list, { token, json: { supplier }, headers: match(version) });
+    const refused = await rename(one, name, 1);
+    expect([refused.status, refused.json.errors[0].pointer]).toEqual([409, '/supplier']);
+    expect(refused.json.detail).toContain(other.split('/').at(-1));
+    expect((await rename(other, name, 1)).status).toBe(200);
+    expect((await rename(other, `Yard ${made}`, 2)).status).toBe(200);
+    expect((await rename(one, name, 1)).status).toBe(200);
+    for (const supplier of [name, `Yard ${made}`]) {
+      const again = await ask('POST', LIST, { token, json: { supplier, as_of: '2026-11-19' } });
+      expect([again.status, again.json.errors[0].code]).toEqual([409, 'taken']);
+    }
+    await rename(one, `Depot ${made}`, 2);
+    const atAddress = await ask('POST', LIST, { token, json: { supplier: name, as_of: '2026-11-19' } });
+    expect(atAddress.json.detail).toContain(`“Yard ${made}”`);
+  });
+
   test.each([
     [{ supplier: '', as_of: '2026-11-19' }, '/supplier'],
     [{ supplier: '???', as_of: '2026-11-19' }, '/supplier'],

@@ -9,6 +9,7 @@ import type { AuditEntry } from '@/features/audit/audit';
 import { recordAudit } from '@/features/audit/audit.server';
 import type { Actor } from '@/features/review/rows.server';
 import { AppError, invalid, notFound, stale } from '@/lib/app-error';
+import { paths } from '@/paths';
 import { suppliersOf } from './of-sections.server';
 import {
   daysBetween,
@@ -148,6 +149,8 @@ export async function createStockList(actor: Actor, given: NewStockList): Promis
   requirePast(given.as_of);
   const slug = slugOf(given.supplier);
   return withPractice(actor, async (tx) => {
+    const holder = await sameName(tx, actor.practiceId, given.supplier);
+    if (holder) throw taken(holder);
     const [made] = await tx
       .insert(stockList)
       .values({
@@ -161,15 +164,36 @@ export async function createStockList(actor: Actor, given: NewStockList): Promis
       })
       .onConflictDoNothing({ target: [stockList.practiceId, stockList.slug] })
       .returning({ id: stockList.id });
-    if (!made) throw taken(given.supplier);
+    if (!made) throw taken(await viewOf(tx, actor.practiceId, slug));
     const after = { supplier: given.supplier, as_of: given.as_of, note: given.note };
     await record(tx, actor, made.id, { action: 'stock.create', after });
     return viewOf(tx, actor.practiceId, slug);
   });
 }
 
-function taken(supplier: string): AppError {
-  const message = `There is a stock list of “${supplier}” already. Replace its lines instead.`;
+type Named = Pick<ListRow, 'slug' | 'supplier'>;
+
+/**
+ * Another list whose supplier is called the same but for case, accents and marks. All lists are held until the
+ * transaction ends, so that of two renamed at once the second sees the first.
+ */
+async function sameName(
+  tx: Tx,
+  practiceId: string,
+  supplier: string,
+  except?: string,
+): Promise<Named | undefined> {
+  const lists = await tx
+    .select({ slug: stockList.slug, supplier: stockList.supplier })
+    .from(stockList)
+    .where(eq(stockList.practiceId, practiceId))
+    .orderBy(asc(stockList.id))
+    .for('update');
+  return lists.find((one) => one.slug !== except && slugOf(one.supplier) === slugOf(supplier));
+}
+
+function taken({ slug, supplier }: Named): AppError {
+  const message = `The stock list “${supplier}”, at ${paths.stockList(slug)}, has this name already. Change that one, or give another name.`;
   return new AppError('conflict', message, {
     faults: [{ pointer: '/supplier', code: 'taken', message }],
   });
@@ -224,6 +248,8 @@ export async function changeStockList(
   if (asOf !== undefined) requirePast(asOf);
   return withPractice(actor, async (tx) => {
     const before = await viewOf(tx, actor.practiceId, slug);
+    const holder = supplier && (await sameName(tx, actor.practiceId, supplier, slug));
+    if (holder) throw taken(holder);
     const change = {
       ...(supplier !== undefined && { supplier }),
       ...(asOf !== undefined && { asOf }),

@@ -5,8 +5,10 @@ import { ZoneHeading } from '@/components/ui/ZoneHeading';
 import { read } from '@/lib/read';
 import { paths } from '@/paths';
 import type { ListActions } from './LinesZone';
+import { type Refused, saidAt, saidElsewhere } from './refused';
 import { StockListChange, type StockListView } from './stock';
 import { stockApi } from './stock.api';
+import { goneWords } from './words';
 
 interface AboutZoneProps extends ListActions {
   readonly list: StockListView;
@@ -17,26 +19,30 @@ interface AboutZoneProps extends ListActions {
 export function AboutZone({ list, today, act }: AboutZoneProps) {
   /** Only what was typed: the rest follows the list. */
   const [typed, setTyped] = useState<StockListChange>({});
-  const [said, setSaid] = useState<{ words: string; isWrong: boolean } | null>(null);
+  const [refused, setRefused] = useState<Refused | null>(null);
+  const [done, setDone] = useState('');
   const reading = read(StockListChange, typed);
   const error = (name: keyof StockListChange) =>
-    reading.ok ? undefined : reading.faults.find(({ pointer }) => pointer === `/${name}`)?.message;
+    saidAt(reading.ok ? refused : { message: '', faults: reading.faults }, `/${name}`);
   const field = (name: keyof StockListChange) => ({
     value: typed[name] ?? list[name],
     error: error(name),
     onChange: ({ target }: { target: { value: string } }) => {
       setTyped({ ...typed, [name]: target.value });
-      setSaid(null);
+      setRefused(null);
+      setDone('');
     },
   });
   async function save(event: SyntheticEvent) {
     event.preventDefault();
-    if (Object.keys(typed).length === 0) return setSaid({ words: 'Nothing has changed.', isWrong: false });
+    if (Object.keys(typed).length === 0) return setDone('Nothing has changed.');
     if (!reading.ok) return;
-    const refused = await act((version) => stockApi.change(list.slug, version, reading.value));
-    if (refused === null) setTyped({});
-    setSaid({ words: refused ?? 'Saved.', isWrong: refused !== null });
+    const answered = await act((version) => stockApi.change(list.slug, version, reading.value));
+    if (answered === null) setTyped({});
+    setRefused(answered);
+    setDone(answered === null ? 'Saved.' : '');
   }
+  const problem = saidElsewhere(refused, ['/supplier', '/as_of', '/note']);
   return (
     <section className="zone">
       <ZoneHeading letter="C">About this list</ZoneHeading>
@@ -52,8 +58,8 @@ export function AboutZone({ list, today, act }: AboutZoneProps) {
         <TextField label="Note" rows={3} maxLength={2000} {...field('note')} />
         <p className="flex flex-wrap items-center gap-14">
           <Button type="submit">Save</Button>
-          <span role="status" className={said?.isWrong ? 'font-semibold text-error' : 'text-ink-2'}>
-            {said?.words}
+          <span role="status" className={problem ? 'font-semibold text-error' : 'text-ink-2'}>
+            {problem ?? done}
           </span>
         </p>
       </form>
@@ -68,13 +74,13 @@ function Removal({ list, act }: Pick<AboutZoneProps, 'list' | 'act'>) {
   async function remove() {
     const refused = await act((version) => stockApi.remove(list.slug, version));
     if (refused === null) location.assign(paths.stock);
-    else setProblem(refused);
+    else setProblem(saidElsewhere(refused, []));
   }
   return (
     <div className="mt-20 border-t border-rule pt-10">
       {isAsked ? (
         <p className="flex flex-wrap items-center gap-10">
-          <span>Its {list.lines} lines go with it. The record keeps that it was.</span>
+          <span>{goneWords(list.lines)} The record keeps that it was.</span>
           <Button size="small" onClick={() => void remove()}>
             Remove for good
           </Button>

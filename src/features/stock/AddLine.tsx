@@ -1,14 +1,15 @@
 import { useState } from 'react';
 import { Button } from '@/components/ui/Button';
 import { ChoiceField, Field } from '@/components/ui/Field';
-import { HoldingForm } from './LineRow';
+import { HoldingForm } from './HoldingForm';
+import { type Refused, saidAt } from './refused';
 import type { Holding, NewStockLine } from './stock';
 
 const NOTHING: Holding = { lengths_m: [], lead_time_days: null, price_band: null, note: '' };
 
 interface AddLineProps {
   readonly tables: readonly { readonly slug: string; readonly name: string }[];
-  readonly onAdd: (line: NewStockLine) => Promise<string | null>;
+  readonly onAdd: (line: NewStockLine) => Promise<Refused | null>;
 }
 
 /** A line that is added by hand. */
@@ -16,7 +17,7 @@ export function AddLine({ tables, onAdd }: AddLineProps) {
   const [isOpen, setOpen] = useState(false);
   const [designation, setDesignation] = useState('');
   const [table, setTable] = useState('');
-  const [problem, setProblem] = useState<string | null>(null);
+  const [refused, setRefused] = useState<Refused | null>(null);
   if (!isOpen)
     return (
       <p className="mt-10">
@@ -27,38 +28,53 @@ export function AddLine({ tables, onAdd }: AddLineProps) {
     { value: '', label: 'The only one that has it' },
     ...tables.map(({ slug, name }) => ({ value: slug, label: name })),
   ];
+  const typed =
+    (set: (value: string) => void) =>
+    ({ target }: { target: { value: string } }) => {
+      set(target.value);
+      setRefused(null);
+    };
   const close = () => {
     setOpen(false);
     setDesignation('');
-    setProblem(null);
+    setTable('');
+    setRefused(null);
   };
-  async function add(held: Holding): Promise<string | null> {
-    const refused = await onAdd({ designation, ...(table !== '' && { table }), ...held });
-    setProblem(refused);
-    return refused === null ? null : '';
+  async function add(held: Holding): Promise<Refused | null> {
+    const answered = await onAdd({ designation, ...(table !== '' && { table }), ...held });
+    setRefused(answered);
+    return answered;
   }
   return (
     <section aria-label="A new line" className="mt-10 border border-rule-strong px-14 py-10">
-      <div className="grid max-w-620 grid-cols-2 gap-14 max-md:grid-cols-1">
-        <Field
-          label="Designation"
-          placeholder="IPE 300"
-          autoFocus
-          autoComplete="off"
-          spellCheck={false}
-          maxLength={100}
-          value={designation}
-          error={problem ?? undefined}
-          onChange={({ target }) => setDesignation(target.value)}
-        />
-        <ChoiceField
-          label="Section table"
-          choices={choices}
-          value={table}
-          onChange={({ target }) => setTable(target.value)}
-        />
-      </div>
-      <HoldingForm title="What the supplier holds of it" held={NOTHING} onClose={close} onKeep={add} />
+      <HoldingForm
+        title="What the supplier holds of it"
+        held={NOTHING}
+        saysAt={['/designation', '/table']}
+        onClose={close}
+        onKeep={add}
+      >
+        <div className="grid max-w-620 grid-cols-2 gap-14 max-md:grid-cols-1">
+          <Field
+            label="Designation"
+            placeholder="IPE 300"
+            autoFocus
+            autoComplete="off"
+            spellCheck={false}
+            maxLength={100}
+            value={designation}
+            error={saidAt(refused, '/designation')}
+            onChange={typed(setDesignation)}
+          />
+          <ChoiceField
+            label="Section table"
+            choices={choices}
+            value={table}
+            error={saidAt(refused, '/table')}
+            onChange={typed(setTable)}
+          />
+        </div>
+      </HoldingForm>
     </section>
   );
 }

@@ -1,17 +1,17 @@
-import { type SyntheticEvent, useState } from 'react';
+import { useState } from 'react';
 import { Button } from '@/components/ui/Button';
-import { ChoiceField, Field } from '@/components/ui/Field';
 import type { UnitSystemName } from '@/engine/quantity';
 import { shownName } from '@/features/section/display';
 import { paths } from '@/paths';
-import { BY_HAND, readHolding } from './cells';
-import { type Holding, PRICE_BANDS, type StockLine } from './stock';
+import { HoldingForm } from './HoldingForm';
+import { type Refused, saidElsewhere } from './refused';
+import type { Holding, StockLine } from './stock';
 import { leadWords, lengthsWords } from './words';
 
 export interface LineActions {
-  /** What is wrong, by field; null when it is kept. */
-  readonly onChange: (line: StockLine, held: Holding) => Promise<string | null>;
-  readonly onRemove: (line: StockLine) => Promise<string | null>;
+  /** What is wrong; null when it is kept. */
+  readonly onChange: (line: StockLine, held: Holding) => Promise<Refused | null>;
+  readonly onRemove: (line: StockLine) => Promise<Refused | null>;
 }
 
 interface LineRowProps extends Partial<LineActions> {
@@ -74,7 +74,7 @@ export function LineRow({ line, tableName, system, onChange, onRemove }: LineRow
 interface RowActionsProps {
   readonly designation: string;
   readonly onChange: () => void;
-  readonly onRemove: () => Promise<string | null>;
+  readonly onRemove: () => Promise<Refused | null>;
 }
 
 function RowActions({ designation, onChange, onRemove }: RowActionsProps) {
@@ -87,7 +87,7 @@ function RowActions({ designation, onChange, onRemove }: RowActionsProps) {
           <>
             <Button
               tone="text"
-              onClick={async () => setProblem(await onRemove())}
+              onClick={async () => setProblem(saidElsewhere(await onRemove(), []))}
               aria-label={`Take out ${designation}`}
             >
               Take out
@@ -113,78 +113,5 @@ function RowActions({ designation, onChange, onRemove }: RowActionsProps) {
         </p>
       )}
     </>
-  );
-}
-
-const BANDS = [{ value: '', label: 'Not said' }, ...PRICE_BANDS.map((value) => ({ value, label: value }))];
-
-interface HoldingFormProps {
-  readonly title: string;
-  readonly takesFocus?: boolean;
-  readonly held: Holding;
-  /** What is wrong, empty where it is said elsewhere; null when it is kept. */
-  readonly onKeep: (held: Holding) => Promise<string | null>;
-  readonly onClose: () => void;
-}
-
-const textsOf = ({ lengths_m, lead_time_days, price_band, note }: Holding) => ({
-  lengths: lengths_m.join('; '),
-  lead_time: lead_time_days === null ? '' : String(lead_time_days),
-  price_band: price_band ?? '',
-  note,
-});
-type HeldTexts = ReturnType<typeof textsOf>;
-
-/** What a supplier holds, as typed; read as a cell of a list is. */
-export function HoldingForm({ title, takesFocus = false, held, onKeep, onClose }: HoldingFormProps) {
-  const [texts, setTexts] = useState<HeldTexts>(() => textsOf(held));
-  const [problem, setProblem] = useState<string | null>(null);
-  const [isBusy, setBusy] = useState(false);
-  const read = readHolding({ designation: title, table: '', ...texts }, BY_HAND);
-  const error = (name: keyof HeldTexts) =>
-    'lengths_m' in read ? undefined : read.find(({ field }) => field === name)?.message;
-  const field = (name: keyof HeldTexts) => ({
-    value: texts[name],
-    error: error(name),
-    autoComplete: 'off',
-    onChange: ({ target }: { target: { value: string } }) => setTexts({ ...texts, [name]: target.value }),
-  });
-  async function keep(event: SyntheticEvent) {
-    event.preventDefault();
-    if (!('lengths_m' in read) || isBusy) return;
-    setBusy(true);
-    const refused = await onKeep(read);
-    setBusy(false);
-    setProblem(refused);
-    if (refused === null) onClose();
-  }
-  return (
-    <form
-      onSubmit={keep}
-      onKeyDown={({ key }) => key === 'Escape' && onClose()}
-      aria-label={title}
-      className="grid w-full gap-10 py-6 text-left"
-    >
-      <p className="font-semibold">{title}</p>
-      <div className="grid grid-cols-[minmax(0,2fr)_minmax(0,1fr)_minmax(0,1fr)_minmax(0,2fr)] gap-14 max-md:grid-cols-2">
-        <Field label="Stock lengths, m" placeholder="6; 12" autoFocus={takesFocus} {...field('lengths')} />
-        <Field label="Lead time, days" inputMode="numeric" {...field('lead_time')} />
-        <ChoiceField label="Price band" choices={BANDS} {...field('price_band')} />
-        <Field label="Note" maxLength={200} {...field('note')} />
-      </div>
-      {problem && (
-        <p role="alert" className="font-semibold text-error">
-          {problem}
-        </p>
-      )}
-      <p className="flex gap-10">
-        <Button type="submit" size="small">
-          {isBusy ? 'Saving' : 'Save the line'}
-        </Button>
-        <Button size="small" tone="text" onClick={onClose}>
-          Leave it
-        </Button>
-      </p>
-    </form>
   );
 }

@@ -7,6 +7,7 @@ import { counted } from '@/features/desk/words';
 import { useRestedValue } from '@/features/template/use-live';
 import { AddLine } from './AddLine';
 import { type LineActions, LineRow } from './LineRow';
+import type { Refused } from './refused';
 import type { NewStockLine, StockLine, StockListView } from './stock';
 import { type Acted, type LinesPage, stockApi } from './stock.api';
 
@@ -47,8 +48,8 @@ function useLines(slug: string, version: number, q: string, first: LinesPage) {
 }
 
 export interface ListActions {
-  /** Does something to the list; what is wrong in words, or null when it is done. */
-  readonly act: <T>(work: (version: number) => Promise<Acted<T>>) => Promise<string | null>;
+  /** Does something to the list, one thing at a time; what is wrong, or null when it is done. */
+  readonly act: <T>(work: (version: number) => Promise<Acted<T>>) => Promise<Refused | null>;
 }
 
 interface LinesZoneProps extends ListActions {

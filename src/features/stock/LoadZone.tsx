@@ -8,6 +8,7 @@ import { FaultList } from './FaultList';
 import { rowsCsv } from './file';
 import type { ListActions } from './LinesZone';
 import { isTouched, type Loaded } from './loaded';
+import { type Refused, saidAt, saidElsewhere } from './refused';
 import { markNameOf, type StockListView } from './stock';
 import { stockApi } from './stock.api';
 import { useLoad } from './use-load';
@@ -161,14 +162,16 @@ interface KeepingProps extends ListActions {
 /** As of which day, and the press that keeps it. */
 function Keeping({ load, loaded, list, today, act }: KeepingProps) {
   const [asOf, setAsOf] = useState('');
+  const [refused, setRefused] = useState<Refused | null>(null);
   const { check, rows, file } = loaded;
   const isChanged = isTouched(loaded);
   const mustCheck = check.fault_count > 0 || isChanged;
   async function keep() {
     const given = { asOf, csv: rowsCsv(rows, file.as), mark: markNameOf(file.as.mark) };
-    const refused = await act((version) => stockApi.replace(list.slug, version, given));
-    if (refused === null) load.clear();
-    load.say(refused);
+    const answered = await act((version) => stockApi.replace(list.slug, version, given));
+    if (answered === null) load.clear();
+    setRefused(answered);
+    load.say(saidElsewhere(answered, ['/as_of']));
   }
   return (
     <div className="mt-14 flex flex-wrap items-end gap-14">
@@ -179,7 +182,11 @@ function Keeping({ load, loaded, list, today, act }: KeepingProps) {
           required
           max={today}
           value={asOf}
-          onChange={({ target }) => setAsOf(target.value)}
+          error={saidAt(refused, '/as_of')}
+          onChange={({ target }) => {
+            setAsOf(target.value);
+            setRefused(null);
+          }}
         />
       </div>
       {mustCheck ? (

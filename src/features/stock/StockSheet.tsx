@@ -1,4 +1,4 @@
-import { useState } from 'react';
+import { useRef, useState } from 'react';
 import { Notice } from '@/components/ui/Notice';
 import { SheetHead } from '@/components/ui/SheetHead';
 import { TitleBlock } from '@/components/ui/TitleBlock';
@@ -9,6 +9,7 @@ import { paths } from '@/paths';
 import { AboutZone } from './AboutZone';
 import { LinesZone } from './LinesZone';
 import { LoadZone } from './LoadZone';
+import type { Refused } from './refused';
 import { isOld, type StockListView } from './stock';
 import { type Acted, type LinesPage, stockApi } from './stock.api';
 import { ageWords, OLD_WORDS } from './words';
@@ -23,22 +24,41 @@ interface StockSheetProps {
   readonly today: string;
 }
 
-const STALE = 'Somebody changed this list in between; it is shown as it stands now. Look, and do it again.';
+const inWords = (message: string): Refused => ({ message, faults: [] });
+const STALE = inWords(
+  'Somebody changed this list in between; it is shown as it stands now. Look, and do it again.',
+);
+const WAIT = inWords('What was done before is still being kept. Do this again in a moment.');
 
 /** The list as it stands, and how something is done to it. */
 function useList(first: StockListView) {
   const [list, setList] = useState(first);
-  async function act<T>(work: (version: number) => Promise<Acted<T>>): Promise<string | null> {
-    const acted = await work(list.version);
-    if (acted.kind === 'refused') return acted.message;
+  // Known at once, before a second press.
+  const version = useRef(first.version);
+  const isBusy = useRef(false);
+  const show = (now: StockListView) => {
+    version.current = now.version;
+    setList(now);
+  };
+  async function settle<T>(acted: Acted<T>): Promise<Refused | null> {
+    if (acted.kind === 'refused') return acted;
     if (acted.kind === 'stale') {
-      setList(acted.list);
+      show(acted.list);
       return STALE;
     }
     if (acted.version === 0) return null; // the list is gone
-    const now = await stockApi.read(list.slug);
-    if (now.kind === 'done') setList(now.value);
+    version.current = acted.version;
+    const now = await stockApi.read(first.slug);
+    if (now.kind === 'done') show(now.value);
+    else setList((before) => ({ ...before, version: acted.version }));
     return null;
+  }
+  async function act<T>(work: (version: number) => Promise<Acted<T>>): Promise<Refused | null> {
+    if (isBusy.current) return WAIT;
+    isBusy.current = true;
+    const refused = await settle(await work(version.current));
+    isBusy.current = false;
+    return refused;
   }
   return { list, act };
 }

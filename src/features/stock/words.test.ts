@@ -1,5 +1,13 @@
 import { expect, test } from 'vitest';
-import { ageWords, heldWords, lengthsWords, stockChoices, stockQuery } from './words';
+import {
+  ageWords,
+  goneWords,
+  heldWords,
+  lengthsWords,
+  notHeldWords,
+  stockChoices,
+  stockQuery,
+} from './words';
 
 const TODAY = '2026-12-01';
 const SUPPLIERS = [
@@ -33,5 +41,17 @@ test('a choice of stock says which lists are old, and is a query', () => {
     ['In stock', { stock: '1' }],
     ['In stock: Near', { supplier: 'near' }],
     ['In stock: Far (122 days old)', { supplier: 'far' }],
+  ]);
+});
+
+test('one list and one line are not said in the plural', () => {
+  expect([1, 2].map(notHeldWords)).toEqual([
+    'The one stock list does not have it.',
+    'None of the 2 stock lists has it.',
+  ]);
+  expect([0, 1, 2].map(goneWords)).toEqual([
+    'It has no lines.',
+    'Its one line goes with it.',
+    'Its 2 lines go with it.',
   ]);
 });

@@ -68,3 +68,13 @@ export const namedStock = (
     const supplier = suppliers.find(({ slug }) => slug === held.supplier);
     return supplier ? [{ supplier, held }] : [];
   });
+
+/** Of a section that none of so many stock lists has. */
+export const notHeldWords = (lists: number): string =>
+  lists === 1 ? 'The one stock list does not have it.' : `None of the ${lists} stock lists has it.`;
+
+/** What goes with a list of so many lines that is removed. */
+export function goneWords(lines: number): string {
+  if (lines === 0) return 'It has no lines.';
+  return lines === 1 ? 'Its one line goes with it.' : `Its ${lines} lines go with it.`;
+}

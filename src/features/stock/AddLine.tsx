@@ -13,17 +13,20 @@ interface AddLineProps {
 }
 
 /** A line that is added by hand. */
-export function AddLine({ tables, onAdd }: AddLineProps) {
+export function AddLine(props: AddLineProps) {
   const [isOpen, setOpen] = useState(false);
+  if (isOpen) return <NewLine {...props} onClose={() => setOpen(false)} />;
+  return (
+    <p className="mt-10">
+      <Button onClick={() => setOpen(true)}>Add a line</Button>
+    </p>
+  );
+}
+
+function NewLine({ tables, onAdd, onClose }: AddLineProps & { readonly onClose: () => void }) {
   const [designation, setDesignation] = useState('');
   const [table, setTable] = useState('');
   const [refused, setRefused] = useState<Refused | null>(null);
-  if (!isOpen)
-    return (
-      <p className="mt-10">
-        <Button onClick={() => setOpen(true)}>Add a line</Button>
-      </p>
-    );
   const choices = [
     { value: '', label: 'The only one that has it' },
     ...tables.map(({ slug, name }) => ({ value: slug, label: name })),
@@ -34,12 +37,6 @@ export function AddLine({ tables, onAdd }: AddLineProps) {
       set(target.value);
       setRefused(null);
     };
-  const close = () => {
-    setOpen(false);
-    setDesignation('');
-    setTable('');
-    setRefused(null);
-  };
   async function add(held: Holding): Promise<Refused | null> {
     const answered = await onAdd({ designation, ...(table !== '' && { table }), ...held });
     setRefused(answered);
@@ -51,7 +48,7 @@ export function AddLine({ tables, onAdd }: AddLineProps) {
         title="What the supplier holds of it"
         held={NOTHING}
         saysAt={['/designation', '/table']}
-        onClose={close}
+        onClose={onClose}
         onKeep={add}
       >
         <div className="grid max-w-620 grid-cols-2 gap-14 max-md:grid-cols-1">

@@ -1,4 +1,5 @@
 import { beforeAll, expect, test } from 'vitest';
+import type { User } from '@/features/account/account';
 import { createApiToken } from '@/features/account/token.server';
 import { readSectionPage } from '@/features/section/page.server';
 import { ask } from '../support/app';
@@ -23,8 +24,13 @@ beforeAll(async () => {
 }, 120_000);
 
 const usesOf = async (designation: string, from: number) =>
-  (await readSectionPage(practice.engineer, { table: 'european-i', designation, edition: undefined }, from))
-    .uses;
+  (
+    await readSectionPage(
+      practice.engineer as User,
+      { table: 'european-i', designation, edition: undefined },
+      from,
+    )
+  ).uses;
 
 test('the members made of a section are counted on whichever page', async () => {
   expect(await usesOf('IPE 300', 0)).toMatchObject({

@@ -5,13 +5,14 @@ import type { Answer } from './answer';
 import { USUAL_COLUMNS } from './columns';
 import { sectionsCsv } from './csv';
 import { FIELD_WORDS } from './display';
+import { type InView, RowsInView } from './in-view';
 import { SECTION_MEASURES, type SectionMeasure, type SectionQuery } from './query';
 
 interface ResultLineProps {
   readonly answer: Answer;
   /** How many sections the practice has. */
   readonly of: number;
-  readonly view: { readonly first: number; readonly last: number };
+  readonly inView: InView;
   readonly system: UnitSystemName;
   /** Nothing is called as was typed; these are only like it. */
   readonly nearest: boolean;
@@ -40,7 +41,7 @@ function countWords({ answer: { total, query }, of, nearest }: ResultLineProps):
 
 /** How many there are, in which order, which of them are in view; and the way to take them along. */
 export function ResultLine(props: ResultLineProps) {
-  const { view, answer, said, onSaid, system, columns } = props;
+  const { inView, answer, said, onSaid, system, columns } = props;
   const { rows, total, query } = answer;
   const [count, words] = countWords(props);
   return (
@@ -61,11 +62,7 @@ export function ResultLine(props: ResultLineProps) {
       <span role="status" className="text-ink-2">
         {said}
       </span>
-      {total > 0 && view.last > 0 && (
-        <span className="ml-auto text-ink-2">
-          Rows {view.first} to {view.last} of {total}
-        </span>
-      )}
+      <RowsInView inView={inView} total={total} />
       <a className="link" href={paths.buildSection}>
         Make a section
       </a>

@@ -1,4 +1,4 @@
-import { useCallback, useId, useMemo, useState } from 'react';
+import { useId, useMemo, useState } from 'react';
 import { Button } from '@/components/ui/Button';
 import { useKeys } from '@/components/ui/use-keys';
 import type { UnitSystemName } from '@/engine/quantity';
@@ -9,6 +9,7 @@ import { ColumnChooser } from './ColumnChooser';
 import { Comparison } from './Comparison';
 import { EditionBlock } from './EditionBlock';
 import type { EditionView } from './edition';
+import { InView } from './in-view';
 import { PinTray } from './PinTray';
 import type { SectionMeasure } from './query';
 import { ResultLine } from './ResultLine';
@@ -119,15 +120,14 @@ function Schedule({
 }: SearchProps & { found: ReturnType<typeof useSearch>; choosing: ColumnChoosing }) {
   const chooser = useId();
   const [isChoosing, setChoosing] = useState(false);
-  const [view, setView] = useState({ first: 1, last: 0 });
-  const onView = useCallback((first: number, last: number) => setView({ first, last }), []);
+  const [inView] = useState(() => new InView());
   const uses = useMemo(() => new Map(props.uses), [props.uses]);
   // As they are drawn and numbered: a pin of what is no longer there has no number.
   const pins = useMemo(() => answer.pinned.map(keyOf), [answer.pinned]);
   return (
     <>
       <ResultLine
-        {...{ view, answer, system }}
+        {...{ inView, answer, system }}
         of={library}
         said={found.said}
         nearest={found.nearest}
@@ -150,7 +150,8 @@ function Schedule({
         <NoSection state={state} onClear={() => setState(cleared)} />
       ) : (
         <SectionTable
-          {...{ system, uses, pins, onView }}
+          {...{ system, uses, pins }}
+          onView={inView.tell}
           rows={answer.rows}
           total={answer.total}
           query={answer.query}

@@ -45,6 +45,8 @@ export function useRows(count: number) {
     getScrollElement: () => scroller.current,
     estimateSize: () => row,
     overscan: 6,
+    // Drawn with the frame, not before the scroll goes on.
+    useFlushSync: false,
     scrollPaddingEnd: head,
     initialRect: FIRST_PAINT,
   });

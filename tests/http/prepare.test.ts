@@ -123,8 +123,13 @@ describe('the role that web and worker sign in with', () => {
       () => expect([sweep, verify].every(({ mock }) => mock.calls.length === 1)).toBe(true),
       20_000,
     );
+    // That it failed is written a moment after it has.
+    await vi.waitFor(
+      async () =>
+        expect(await sender.getJobById('verify-audit-chains', id ?? '')).toMatchObject({ state: 'retry' }),
+      10_000,
+    );
     await queue.stop();
-    expect(await sender.getJobById('verify-audit-chains', id ?? '')).toMatchObject({ state: 'retry' });
     await sender.stop({ graceful: false });
   }, 30_000);
 });

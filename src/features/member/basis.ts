@@ -33,7 +33,7 @@ export const categoriesOf = (draft: Draft, { document }: CombinationChoice, crit
   });
 
 /** The groups that act only where adverse, with the ground for it. */
-export const patternedOf = (judged: MemberInputs['criteria']) =>
+const patternedOf = (judged: MemberInputs['criteria']) =>
   (judged?.patterns ?? [])
     .filter(({ where_adverse }) => where_adverse)
     .map(({ group, basis }) => ({ letter: judged?.letters?.[group] ?? group, basis }));

@@ -18,7 +18,7 @@ interface Held {
 }
 const held = new LRUCache<string, Held>({
   maxSize: MOST,
-  sizeCalculation: ({ register }) => register.count + 1,
+  sizeCalculation: ({ register }) => Math.min(register.count + 1, MOST),
 });
 const underWay = new Map<string, Promise<Register>>();
 
